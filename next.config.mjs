@@ -1,0 +1,21 @@
+/** @type {import('next').NextConfig} */
+const config = {
+  reactStrictMode: true,
+  poweredByHeader: false,
+  devIndicators: false,
+  allowedDevOrigins: ['127.0.0.1'],
+  // Native or file-reading packages stay outside the bundle.
+  serverExternalPackages: [
+    '@node-rs/argon2',
+    'pg',
+    'pg-boss',
+    'jimp',
+    'formidable',
+    '@react-pdf/renderer',
+    'nodemailer',
+    'smtp-server',
+    'pino',
+  ],
+}
+
+export default config
