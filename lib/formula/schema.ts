@@ -1,0 +1,113 @@
+import { z } from '@/lib/http/zod'
+import { density, inciName, priceCentsPerKg } from '@/lib/ingredient/schema'
+
+export const emulsionTypes = ['water-in-oil', 'water-in-silicone', 'oil-in-water'] as const
+export const emulsionType = z.enum(
+  emulsionTypes,
+  'Choose the emulsion type: water-in-oil, water-in-silicone or oil-in-water.',
+)
+export type EmulsionType = z.infer<typeof emulsionType>
+
+export const formulaCode = z
+  .string()
+  .trim()
+  .min(1, 'Give the formula a code, such as N86.')
+  .max(20, 'A code has at most 20 letters and digits.')
+  .regex(/^[A-Za-z0-9]+$/, 'A code has letters and digits only, such as N86.')
+
+const text = (max: number) => z.string().trim().max(max, `At most ${max} signs fit here.`)
+export const phaseName = text(20).regex(/^[A-Za-z0-9]*$/, 'A phase is a letter, such as A.')
+
+/** Percentages are whole thousandths of a percent, so that a total of 100 % is exact. */
+export const percentThousandths = z
+  .number('Give the share as a number in % w/w, such as 2.40.')
+  .int('A share has at most three decimals.')
+  .min(0, 'A share is not below 0 %.')
+  .max(100_000, 'A share is at most 100 %.')
+
+export const formulaLine = z.object({
+  id: z.uuid(),
+  phase: phaseName.min(1, 'Give the phase, such as A.'),
+  ingredientId: z.uuid().nullable().default(null),
+  inciName,
+  function: text(100).default(''),
+  percentThousandths,
+  density,
+  isInternal: z.boolean(),
+  priceCentsPerKg: priceCentsPerKg.default(null),
+})
+export type FormulaLine = z.infer<typeof formulaLine>
+
+export const formulaStep = z.object({
+  id: z.uuid(),
+  /** One phase ("B") or two that are joined ("B into A"). */
+  phase: text(40).default(''),
+  instruction: text(1000).min(1, 'Say what is done in this step.'),
+  speedRpm: z
+    .number('Give the speed in rpm as a number.')
+    .int('A speed is a whole number of rpm.')
+    .min(0, 'A speed is not below 0 rpm.')
+    .max(50_000, 'No mixer runs above 50 000 rpm.')
+    .nullable()
+    .default(null),
+  minutes: z
+    .number('Give the minutes as a number.')
+    .min(0, 'A step does not last less than 0 minutes.')
+    .max(10_000, 'A step lasts at most 10 000 minutes.')
+    .nullable()
+    .default(null),
+  temperatureC: z
+    .number('Give the temperature in °C as a number.')
+    .min(-50, 'A step is not colder than −50 °C.')
+    .max(200, 'A step is not hotter than 200 °C.')
+    .nullable()
+    .default(null),
+  caution: text(500).default(''),
+})
+export type FormulaStep = z.infer<typeof formulaStep>
+
+const name = text(120).min(1, 'Give the formula a name, such as silicone-free cream.')
+const lines = z.array(formulaLine).max(60, 'A formula has at most 60 lines.')
+const steps = z.array(formulaStep).max(60, 'A formula has at most 60 process steps.')
+const note = text(2000).default('')
+
+export const createFormulaInput = z.object({
+  id: z.uuid(),
+  versionId: z.uuid(),
+  code: formulaCode,
+  name,
+  emulsionType,
+  clientId: z.uuid().nullable().default(null),
+  note,
+  lines: lines.default([]),
+  steps: steps.default([]),
+})
+export type CreateFormulaInput = z.infer<typeof createFormulaInput>
+
+export const saveFormulaInput = z.object({
+  versionId: z.uuid(),
+  /** The version of the draft that was on screen; an older one is refused with 412. */
+  version: z.number().int().min(1),
+  name,
+  emulsionType,
+  note,
+  lines,
+  steps,
+})
+export type SaveFormulaInput = z.infer<typeof saveFormulaInput>
+
+export const newVersionInput = z.object({ id: z.uuid(), fromVersionId: z.uuid(), note })
+export type NewVersionInput = z.infer<typeof newVersionInput>
+
+export const formulaSorts = ['code', 'name', 'emulsionType', 'internal', 'batches', 'state'] as const
+export const formulaListQuery = z.object({
+  q: z.string().max(200).catch(''),
+  sort: z.enum(formulaSorts).catch('code'),
+  order: z.enum(['asc', 'desc']).catch('asc'),
+})
+export type FormulaListQuery = z.infer<typeof formulaListQuery>
+
+export const formulasKey = ({ q, sort, order }: FormulaListQuery) =>
+  `/api/formulas?${new URLSearchParams({ q, sort, order })}`
+export const formulaKey = (code: string, number?: number) =>
+  `/api/formulas/${encodeURIComponent(code)}${number ? `?version=${number}` : ''}`
