@@ -1,0 +1,62 @@
+/**
+ * A calculation that cannot be made, with the input field that prevents it. Callers show `message` as it is.
+ */
+export class ScienceError extends Error {
+  readonly field: string
+  constructor(field: string, problem: string) {
+    super(`${field}: ${problem}`)
+    this.name = 'ScienceError'
+    this.field = field
+  }
+}
+
+export function assertFinite(field: string, value: unknown): asserts value is number {
+  if (typeof value !== 'number' || !Number.isFinite(value)) {
+    throw new ScienceError(field, 'is not a finite number')
+  }
+}
+
+export function assertPositive(field: string, value: unknown): asserts value is number {
+  assertFinite(field, value)
+  if (value <= 0) throw new ScienceError(field, `must be above 0, not ${value}`)
+}
+
+export function assertNotNegative(field: string, value: unknown): asserts value is number {
+  assertFinite(field, value)
+  if (value < 0) throw new ScienceError(field, `must not be negative, but is ${value}`)
+}
+
+export function assertNumbers(field: string, values: readonly number[], least: number): void {
+  values.forEach((value, i) => assertFinite(`${field}[${i}]`, value))
+  if (values.length < least) {
+    throw new ScienceError(
+      field,
+      `needs at least ${least} ${least === 1 ? 'value' : 'values'}, has ${values.length}`,
+    )
+  }
+}
+
+export function assertSameLength(
+  fieldA: string,
+  a: readonly unknown[],
+  fieldB: string,
+  b: readonly unknown[],
+): void {
+  if (a.length !== b.length) {
+    throw new ScienceError(fieldB, `has ${b.length} values, but ${fieldA} has ${a.length}`)
+  }
+}
+
+/** Throws where a result overflowed: absurdly large input must never end as Infinity or NaN in an answer. */
+export function assertComputable<T>(field: string, result: T): T {
+  if (!isFiniteThroughout(result))
+    throw new ScienceError(field, 'holds numbers too large or too small to compute with')
+  return result
+}
+
+export function isFiniteThroughout(value: unknown): boolean {
+  if (typeof value === 'number') return Number.isFinite(value)
+  if (Array.isArray(value)) return value.every(isFiniteThroughout)
+  if (value !== null && typeof value === 'object') return Object.values(value).every(isFiniteThroughout)
+  return true
+}

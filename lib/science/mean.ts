@@ -1,0 +1,30 @@
+import { assertNumbers } from './guard'
+
+/** Arithmetic mean in two passes: the second takes up what the first lost to rounding. */
+export function mean(values: readonly number[]): number {
+  assertNumbers('values', values, 1)
+  let sum = 0
+  for (const value of values) sum += value
+  const first = sum / values.length
+  let rest = 0
+  for (const value of values) rest += value - first
+  return first + rest / values.length
+}
+
+/** Middle value, or the mean of the two middle ones. */
+export function median(values: readonly number[]): number {
+  assertNumbers('values', values, 1)
+  const sorted = [...values].sort((a, b) => a - b)
+  const half = sorted.length >> 1
+  const upper = sorted[half]!
+  return sorted.length % 2 === 1 ? upper : (sorted[half - 1]! + upper) / 2
+}
+
+/** Sample standard deviation (n − 1), centred before squaring. */
+export function sampleStandardDeviation(values: readonly number[]): number {
+  assertNumbers('values', values, 2)
+  const centre = mean(values)
+  let squares = 0
+  for (const value of values) squares += (value - centre) ** 2
+  return Math.sqrt(squares / (values.length - 1))
+}
