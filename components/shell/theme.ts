@@ -1,0 +1,9 @@
+export const themes = ['system', 'light', 'dark'] as const
+
+export type Theme = (typeof themes)[number]
+
+export const themeCookie = 'theme'
+
+export function readTheme(value: string | undefined): Theme {
+  return themes.find((theme) => theme === value) ?? 'system'
+}
