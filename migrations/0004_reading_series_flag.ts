@@ -92,12 +92,17 @@ export async function up(db: Kysely<any>): Promise<void> {
       closed_by uuid references person (id),
       closed_at timestamptz,
       closing_note text,
+      -- 'doubt': the doubt is set aside, the reading counts. 'reading': QA named a laboratory cause, it never counts.
+      settles text check (settles in ('doubt','reading')),
+      -- Of a doubt on an instrument's whole day.
+      instrument_id uuid references instrument (id),
+      on_day date,
       version integer not null default 1
     );
     create index flag_study on flag (study_id, state);
     create unique index flag_once on flag
-      (study_id, batch_id, study_station_id, attribute, rule, coalesce(reading_id, '00000000-0000-0000-0000-000000000000'))
-      where state = 'open';
+      (study_id, batch_id, study_station_id, attribute, rule, level, reading_id, instrument_id, on_day)
+      nulls not distinct where state = 'open';
 
     create table flag_comment (
       id uuid primary key,
