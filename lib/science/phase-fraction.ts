@@ -25,7 +25,7 @@ export const highInternalPhaseAbove = 0.74
  * Droplets of mixed sizes can stay spherical above the closest packing of equal ones.
  * Percentages add up as integers of 1e-6 %, so that 100.00 is 100 exactly.
  */
-export function phaseFraction(lines: readonly PhaseLine[]): PhaseFraction {
+export function phaseFraction({ lines }: { lines: readonly PhaseLine[] }): PhaseFraction {
   if (lines.length === 0) throw new ScienceError('lines', 'needs at least one line')
   let volume = 0
   let internalVolume = 0

@@ -1,5 +1,5 @@
 import { tQuantile, tTwoTails } from './distributions'
-import { assertComputable, assertNumbers, assertSameLength, ScienceError } from './guard'
+import { assertComputable, assertFinite, assertNumbers, assertSameLength, ScienceError } from './guard'
 import { mean } from './mean'
 
 /** An ordinary least-squares line with everything that later questions to it need. */
@@ -28,6 +28,29 @@ export type Prediction = {
   meanHigh: number
   newLow: number
   newHigh: number
+}
+
+export type RegressionInput = { x: number[]; y: number[]; confidence?: number; at?: number[] }
+
+export type Regression = Pick<
+  LineFit,
+  'n' | 'slope' | 'intercept' | 'slopeSe' | 'interceptSe' | 'residualSd' | 'r2' | 'df' | 'slopeP'
+> & { predictions: Prediction[] }
+
+/** The line of y on x and its predictions at `at`, with two-sided limits at `confidence` (0.95). */
+export function regression({ x, y, confidence = 0.95, at = [] }: RegressionInput): Regression {
+  assertConfidence(confidence)
+  at.forEach((value, i) => assertFinite(`at[${i}]`, value))
+  const { n, slope, intercept, slopeSe, interceptSe, residualSd, r2, df, slopeP, ...fit } = fitLine(x, y)
+  const own = { n, slope, intercept, slopeSe, interceptSe, residualSd, r2, df, slopeP }
+  return { ...own, predictions: at.map((value) => predictLine({ ...own, ...fit }, value, confidence)) }
+}
+
+export function assertConfidence(confidence: number): void {
+  assertFinite('confidence', confidence)
+  if (confidence <= 0 || confidence >= 1) {
+    throw new ScienceError('confidence', `must lie between 0 and 1, not ${confidence}`)
+  }
 }
 
 /**

@@ -1,5 +1,7 @@
 import { assertComputable, assertNotNegative, assertPositive, ScienceError } from './guard'
 
+export type LayerHeights = { totalMm: number; topMm: number; bottomMm: number }
+
 export type Separation = {
   /** Free oil on top, % of fill height. */
   topPercent: number
@@ -12,7 +14,7 @@ export type Separation = {
  * Separation as percent of fill height: free oil on top plus water or serum below. A cream layer does not count.
  * Heights in mm (or any one unit).
  */
-export function separation(totalMm: number, topMm: number, bottomMm: number): Separation {
+export function separation({ totalMm, topMm, bottomMm }: LayerHeights): Separation {
   assertPositive('totalMm', totalMm)
   assertNotNegative('topMm', topMm)
   assertNotNegative('bottomMm', bottomMm)

@@ -5,13 +5,12 @@ export const torqueRange = { low: 10, high: 100 } as const
 /** Accuracy of the instrument in % of full scale [practice]. */
 const fullScaleErrorPercent = 1
 
+/** `factor` is mPa·s per % torque; otherwise it comes from spindle and speed. */
 export type ViscosityInput = {
   torquePercent: number
-  /** mPa·s per % torque. */
-  factor: number
   /** Distance from the initial to the nearer edge of the band in % of the value, where it is known. */
   bandPercent?: number
-}
+} & ({ factor: number } | { spindleConstant: number; rpm: number })
 
 export type Viscosity = {
   mPas: number
@@ -31,8 +30,10 @@ export function viscosityFactor(spindleConstant: number, rpm: number): number {
  * η = torque % × factor; full scale = 100 × factor; at ±1 % of full scale the error is 100 ÷ torque % percent.
  * ISO 2555 describes the single-cylinder method and does not cover T-bars [memory].
  */
-export function viscosity({ torquePercent, factor, bandPercent }: ViscosityInput): Viscosity {
+export function viscosity(input: ViscosityInput): Viscosity {
+  const { torquePercent, bandPercent } = input
   assertPositive('torquePercent', torquePercent)
+  const factor = 'factor' in input ? input.factor : viscosityFactor(input.spindleConstant, input.rpm)
   assertPositive('factor', factor)
   return assertComputable('torquePercent', {
     mPas: torquePercent * factor,
