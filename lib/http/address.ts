@@ -1,0 +1,34 @@
+import { Server, type IncomingMessage } from 'node:http'
+import { env } from '@/lib/env'
+
+const header = 'x-stillstand-address'
+const installed = Symbol.for('stillstand.address')
+
+/**
+ * Writes the socket's address into a header of our own before anything reads the request. Next passes on
+ * whatever X-Forwarded-For the caller made up, so that one cannot slow down a guesser.
+ */
+export function installAddress(): void {
+  const prototype = Server.prototype as Server & { [installed]?: true }
+  if (prototype[installed]) return
+  prototype[installed] = true
+  const emit = prototype.emit
+  prototype.emit = function (this: Server, event: string, ...rest: unknown[]): boolean {
+    if (event === 'request' || event === 'upgrade') {
+      const request = rest[0] as IncomingMessage
+      request.headers[header] = request.socket.remoteAddress ?? 'unknown'
+    }
+    return Reflect.apply(emit, this, [event, ...rest])
+  } as typeof emit
+}
+
+/** STILLSTAND_PROXIES=1 means: one proxy of ours stands in front, believe the last entry of X-Forwarded-For. */
+export function clientAddress(request: Request): string {
+  const trusted = env().trustedProxies
+  if (trusted > 0) {
+    const hops = (request.headers.get('x-forwarded-for') ?? '').split(',').map((hop) => hop.trim())
+    const claimed = hops.at(-trusted)
+    if (claimed) return claimed
+  }
+  return request.headers.get(header) ?? 'unknown'
+}

@@ -1,0 +1,73 @@
+import { newId } from '@/lib/db/id'
+import type { ErrorBody } from './errors'
+
+/** A refusal as the browser sees it. status 0: no answer came, nothing is known to have been saved. */
+export class ClientError extends Error {
+  readonly status: number
+  readonly code: string
+  readonly sentence: string
+  readonly fields: Record<string, string>
+  readonly detail: unknown
+
+  constructor(error: ErrorBody['error']) {
+    super(error.sentence)
+    this.status = error.status
+    this.code = error.code
+    this.sentence = error.sentence
+    this.fields = error.fields ?? {}
+    this.detail = error.detail
+  }
+}
+
+/** For SWR. */
+export async function fetcher<T>(url: string): Promise<T> {
+  return read<T>(await reach(url, { headers: { accept: 'application/json' } }))
+}
+
+/** Give the same key again when the same act is sent again: it then happens once. */
+export async function send<T>(
+  url: string,
+  method: 'POST' | 'PUT' | 'PATCH' | 'DELETE',
+  body: unknown,
+  options: { key?: string; signal?: AbortSignal } = {},
+): Promise<T> {
+  const isForm = body instanceof FormData
+  return read<T>(
+    await reach(url, {
+      method,
+      body: isForm ? body : JSON.stringify(body ?? {}),
+      signal: options.signal ?? null,
+      headers: {
+        accept: 'application/json',
+        'idempotency-key': options.key ?? newId(),
+        ...(isForm ? {} : { 'content-type': 'application/json' }),
+      },
+    }),
+  )
+}
+
+async function reach(url: string, init: RequestInit): Promise<Response> {
+  try {
+    return await fetch(url, { ...init, credentials: 'same-origin' })
+  } catch (cause) {
+    if (cause instanceof DOMException && cause.name === 'AbortError') throw cause
+    throw new ClientError({
+      status: 0,
+      code: 'unreachable',
+      sentence: 'The server cannot be reached. Check the connection, then try again.',
+    })
+  }
+}
+
+async function read<T>(response: Response): Promise<T> {
+  const body: unknown = await response.json().catch(() => null)
+  if (response.ok) return body as T
+  const error = (body as ErrorBody | null)?.error
+  throw new ClientError(
+    error ?? {
+      status: response.status,
+      code: 'unknown',
+      sentence: 'The server gave an answer that cannot be read. Try again.',
+    },
+  )
+}

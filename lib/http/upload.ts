@@ -1,0 +1,91 @@
+import { mkdir, open, rm } from 'node:fs/promises'
+import path from 'node:path'
+import { Readable } from 'node:stream'
+import type { IncomingMessage } from 'node:http'
+import { fileTypeFromBuffer } from 'file-type'
+import formidable, { errors as formErrors } from 'formidable'
+import { env } from '@/lib/env'
+import { AppError, refuse } from './errors'
+
+export type Received = { path: string; sha256: string; bytes: number; type: string; originalName: string }
+
+export async function receive(
+  request: Request,
+  maxBytes: number,
+  types: readonly string[],
+): Promise<{ file: Received; texts: Record<string, string> }> {
+  if (!/^multipart\/form-data\b/i.test(request.headers.get('content-type') ?? '') || !request.body)
+    throw refuse.unsupported('This address takes a file. Send it as a form with one field named file.')
+  const folder = path.resolve(env().filesFolder, 'incoming')
+  await mkdir(folder, { recursive: true })
+  const form = formidable({
+    uploadDir: folder,
+    hashAlgorithm: 'sha256',
+    maxFiles: 1,
+    maxFields: 30,
+    maxFieldsSize: 100_000,
+    maxFileSize: maxBytes,
+    maxTotalFileSize: maxBytes,
+    allowEmptyFiles: false,
+  })
+  // Names are the server's own; the caller's name is kept as text only.
+  const stored: string[] = []
+  form.on('fileBegin', (_name, file) => void stored.push(file.filepath))
+  try {
+    const source = Object.assign(Readable.fromWeb(request.body as Parameters<typeof Readable.fromWeb>[0]), {
+      headers: Object.fromEntries(request.headers),
+      method: request.method,
+      url: request.url,
+    })
+    const [fields, files] = await form.parse(source as unknown as IncomingMessage)
+    const file = files['file']?.[0]
+    if (!file)
+      throw refuse.invalid('No file arrived. Choose one and send it again.', { file: 'Choose a file.' })
+    const type = await typeOf(file.filepath)
+    if (!type || !types.includes(type))
+      throw refuse.unsupported(`This file is not one of ${types.join(', ')} by its content. Choose another.`)
+    const texts: Record<string, string> = {}
+    for (const [name, values] of Object.entries(fields)) texts[name] = values?.at(-1) ?? ''
+    const originalName = path
+      .basename(file.originalFilename ?? '')
+      .replace(/[\u0000-\u001f]/g, '')
+      .slice(0, 200)
+    return {
+      file: { path: file.filepath, sha256: String(file.hash), bytes: file.size, type, originalName },
+      texts,
+    }
+  } catch (thrown) {
+    await Promise.all(stored.map(discard))
+    throw toRefusal(thrown, maxBytes)
+  }
+}
+
+export async function discard(filePath: string): Promise<void> {
+  await rm(filePath, { force: true })
+}
+
+async function typeOf(filePath: string): Promise<string | undefined> {
+  const handle = await open(filePath)
+  try {
+    const head = Buffer.alloc(4100)
+    const { bytesRead } = await handle.read(head, 0, head.length, 0)
+    return (await fileTypeFromBuffer(head.subarray(0, bytesRead)))?.mime
+  } finally {
+    await handle.close()
+  }
+}
+
+function toRefusal(thrown: unknown, maxBytes: number): unknown {
+  if (thrown instanceof AppError) return thrown
+  const { code, httpCode } = thrown as { code?: number; httpCode?: number }
+  if (
+    code === formErrors.biggerThanMaxFileSize ||
+    code === formErrors.biggerThanTotalMaxFileSize ||
+    httpCode === 413
+  )
+    return refuse.tooLarge(`The file is larger than ${Math.floor(maxBytes / 1e6)} MB. Choose a smaller one.`)
+  if (code === formErrors.noEmptyFiles)
+    return refuse.invalid('The file is empty. Choose another.', { file: 'Choose another file.' })
+  if (httpCode) return refuse.unreadable('The file did not arrive whole. Send it again.')
+  return thrown
+}

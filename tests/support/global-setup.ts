@@ -1,0 +1,5 @@
+import { ensureTemplate } from './template'
+
+export async function setup(): Promise<void> {
+  await ensureTemplate()
+}
