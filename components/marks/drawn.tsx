@@ -80,7 +80,8 @@ function One({ shape }: { shape: Shape }) {
           fontSize={shape.size}
           fontWeight={shape.weight}
           textAnchor={shape.anchor}
-          fill={COLOURS[shape.fill]}
+          // A style, because the page's own rule for words in drawings is stronger than an attribute.
+          style={{ fill: COLOURS[shape.fill] }}
           className={shape.mono ? 'font-mono' : undefined}
         >
           {shape.text}
