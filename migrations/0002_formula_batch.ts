@@ -51,8 +51,11 @@ export async function up(db: Kysely<any>): Promise<void> {
       percent_thousandths integer not null check (percent_thousandths >= 0),
       density numeric not null check (density > 0),
       is_internal boolean not null,
+      -- The one line that makes up what is missing to 100 %.
+      is_remainder boolean not null default false,
       price_cents_per_kg integer check (price_cents_per_kg >= 0)
     );
+    create unique index formula_line_remainder on formula_line (formula_version_id) where is_remainder;
     create index formula_line_version on formula_line (formula_version_id, position);
 
     create table formula_step (

@@ -34,6 +34,8 @@ export const formulaLine = z.object({
   percentThousandths,
   density,
   isInternal: z.boolean(),
+  /** "q.s. to 100": the one line that makes up what is missing. */
+  isRemainder: z.boolean().default(false),
   priceCentsPerKg: priceCentsPerKg.default(null),
 })
 export type FormulaLine = z.infer<typeof formulaLine>
@@ -67,8 +69,15 @@ export const formulaStep = z.object({
 export type FormulaStep = z.infer<typeof formulaStep>
 
 const name = text(120).min(1, 'Give the formula a name, such as silicone-free cream.')
-const lines = z.array(formulaLine).max(60, 'A formula has at most 60 lines.')
-const steps = z.array(formulaStep).max(60, 'A formula has at most 60 process steps.')
+const lines = z
+  .array(formulaLine)
+  .max(60, 'A formula has at most 60 lines.')
+  .refine((all) => all.filter((line) => line.isRemainder).length <= 1, 'Only one line can be q.s. to 100.')
+  .refine(isOnce, 'A line is in this formula twice. Load the page again.')
+const steps = z
+  .array(formulaStep)
+  .max(60, 'A formula has at most 60 process steps.')
+  .refine(isOnce, 'A step is in this formula twice. Load the page again.')
 const note = text(2000).default('')
 
 export const createFormulaInput = z.object({
@@ -106,6 +115,10 @@ export const formulaListQuery = z.object({
   order: z.enum(['asc', 'desc']).catch('asc'),
 })
 export type FormulaListQuery = z.infer<typeof formulaListQuery>
+
+function isOnce(rows: { id: string }[]): boolean {
+  return new Set(rows.map((row) => row.id)).size === rows.length
+}
 
 export const formulasKey = ({ q, sort, order }: FormulaListQuery) =>
   `/api/formulas?${new URLSearchParams({ q, sort, order })}`

@@ -1,0 +1,116 @@
+import { sql } from 'kysely'
+import type { Actor } from '@/lib/auth/actor'
+import type { Db } from '@/lib/db/client'
+import type { EmulsionType } from '@/lib/formula/schema'
+import { refuse } from '@/lib/http/errors'
+import type { BatchState, TypeFound, TypeTestMethod } from '../schema'
+
+/** A batch with its weighing sheet and its process: three statements. */
+export async function getBatch(db: Db, _actor: Actor, code: string) {
+  const batch = await db
+    .selectFrom('batch')
+    .innerJoin('formulaVersion', 'formulaVersion.id', 'batch.formulaVersionId')
+    .innerJoin('formula', 'formula.id', 'formulaVersion.formulaId')
+    .innerJoin('person as maker', 'maker.id', 'batch.createdBy')
+    .leftJoin('person as tester', 'tester.id', 'batch.testedBy')
+    .leftJoin('person as decider', 'decider.id', 'batch.decidedBy')
+    .select([
+      'batch.id',
+      'batch.code',
+      'batch.sizeG',
+      'batch.state',
+      'batch.madeAt',
+      'batch.yieldG',
+      'batch.fillG',
+      'batch.closure',
+      'batch.emulsionTypeMethod',
+      'batch.emulsionTypeFound',
+      'batch.emulsionTypeReason',
+      'batch.conductivityUsCm',
+      'batch.testedAt',
+      'tester.initials as testedBy',
+      'batch.decisionReason',
+      'batch.decidedAt',
+      'decider.initials as decidedBy',
+      'batch.note',
+      'batch.version',
+      'batch.createdAt',
+      'maker.initials as createdBy',
+      'formula.code as formulaCode',
+      'formula.name as formulaName',
+      'formula.emulsionType',
+      'formulaVersion.number as versionNumber',
+      sql<number | null>`extract(epoch from app_now() - batch.made_at) / 3600`.as('restedHours'),
+    ])
+    .where('batch.code', '=', code)
+    .executeTakeFirst()
+  if (!batch) throw refuse.notFound(`There is no batch ${code}. Look for it in the list of batches.`)
+  const [weighings, steps] = await Promise.all([listWeighings(db, batch.id), listSteps(db, batch.id)])
+  return {
+    ...batch,
+    state: batch.state as BatchState,
+    emulsionType: batch.emulsionType as EmulsionType,
+    emulsionTypeMethod: batch.emulsionTypeMethod as TypeTestMethod | null,
+    emulsionTypeFound: batch.emulsionTypeFound as TypeFound | null,
+    weighings,
+    steps,
+  }
+}
+
+export type BatchPage = Awaited<ReturnType<typeof getBatch>>
+
+function listWeighings(db: Db, batchId: string) {
+  return db
+    .selectFrom('batchWeighing')
+    .innerJoin('formulaLine', 'formulaLine.id', 'batchWeighing.formulaLineId')
+    .leftJoin('ingredient', 'ingredient.id', 'formulaLine.ingredientId')
+    .leftJoin('person', 'person.id', 'batchWeighing.weighedBy')
+    .select([
+      'batchWeighing.id',
+      'batchWeighing.targetG',
+      'batchWeighing.actualG',
+      'batchWeighing.actualTyped',
+      'batchWeighing.lot',
+      'batchWeighing.balance',
+      'batchWeighing.note',
+      'batchWeighing.version',
+      'batchWeighing.weighedAt',
+      'person.initials as weighedBy',
+      'formulaLine.phase',
+      'formulaLine.inciName',
+      'formulaLine.function',
+      'formulaLine.percentThousandths',
+      'formulaLine.density',
+      'formulaLine.isInternal',
+      'ingredient.caution',
+    ])
+    .where('batchWeighing.batchId', '=', batchId)
+    .orderBy('batchWeighing.position')
+    .execute()
+}
+
+function listSteps(db: Db, batchId: string) {
+  return db
+    .selectFrom('batchStep')
+    .innerJoin('formulaStep', 'formulaStep.id', 'batchStep.formulaStepId')
+    .leftJoin('person', 'person.id', 'batchStep.doneBy')
+    .select([
+      'batchStep.id',
+      'batchStep.actualSpeedRpm',
+      'batchStep.actualMinutes',
+      'batchStep.actualTemperatureC',
+      'batchStep.note',
+      'batchStep.version',
+      'batchStep.doneAt',
+      'person.initials as doneBy',
+      'formulaStep.phase',
+      'formulaStep.instruction',
+      'formulaStep.speedRpm',
+      'formulaStep.minutes',
+      'formulaStep.temperatureC',
+      'formulaStep.caution',
+    ])
+    .where('batchStep.batchId', '=', batchId)
+    .orderBy('batchStep.position')
+    .execute()
+}

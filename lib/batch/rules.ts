@@ -1,0 +1,139 @@
+import { grouped } from '@/lib/formula/rules/numbers'
+import type { BatchState, TypeFound } from './schema'
+
+/** [practice] A line is taken as weighed right within half a percent of its target … */
+export const tolerancePercent = 0.5
+/** … and never finer than a balance of 0.01 g shows. */
+export const balanceStepG = 0.01
+
+/** [practice] An emulsion rests this long before its type test and its initial readings. */
+export const restHours = { least: 24, most: 72 }
+
+export function targetGrams(sizeG: number, percentThousandths: number): number {
+  return Math.round(sizeG * percentThousandths) / 100_000
+}
+
+export function toleranceGrams(targetG: number): number {
+  return Math.max((targetG * tolerancePercent) / 100, balanceStepG)
+}
+
+export type Weighed = {
+  differenceG: number
+  /** Null where the target is 0. */
+  differencePercent: number | null
+  isWithin: boolean
+  /** "0.38 g to go", "0.41 g too much", "within 0.5 %". */
+  words: string
+}
+
+export function weighed(targetG: number, actualG: number): Weighed {
+  const differenceG = actualG - targetG
+  // Grams are read to 0.001; without rounding 52.26 would miss a limit of 52.26 by float noise.
+  const isWithin = Math.round(Math.abs(differenceG) * 1e6) <= Math.round(toleranceGrams(targetG) * 1e6)
+  const off = gramsText(Math.abs(differenceG))
+  return {
+    differenceG,
+    differencePercent: targetG > 0 ? (100 * differenceG) / targetG : null,
+    isWithin,
+    words: isWithin ? 'Within what is allowed' : `${off} g ${differenceG < 0 ? 'to go' : 'too much'}`,
+  }
+}
+
+/** Two decimals as the balance shows them; three below 1 g. */
+export function gramsText(grams: number): string {
+  return grouped(grams, Math.abs(grams) > 0 && Math.abs(grams) < 1 && !isHundredths(grams) ? 3 : 2)
+}
+
+const isHundredths = (grams: number) => Math.abs(grams * 100 - Math.round(grams * 100)) < 1e-6
+
+export function percentOffText(percent: number | null): string {
+  if (percent === null) return ''
+  const sign = percent > 0 ? '+' : percent < 0 ? '\u2212' : ''
+  return `${sign}${Math.abs(percent).toFixed(2)} %`
+}
+
+type BatchFacts = {
+  state: BatchState
+  weighings: { actualG: number | null; phase: string }[]
+  steps: { doneAt: string | null }[]
+  yieldG: number | null
+  restedHours: number | null
+  emulsionType: string
+  emulsionTypeFound: TypeFound | null
+  decisionReason: string | null
+}
+
+export type BatchFinding = { strong: string; rest: string; sentence: string }
+
+/** Where the batch stands and what it waits for: the page's headline. */
+export function batchFinding(batch: BatchFacts): BatchFinding {
+  if (batch.state === 'rejected') {
+    return { strong: 'Rejected', rest: '', sentence: batch.decisionReason ?? '' }
+  }
+  if (batch.state === 'released') {
+    return {
+      strong: `${grouped(batch.yieldG ?? 0, 0)} g`,
+      rest: ' released for jars',
+      sentence: `${typeSentence(batch)}${batch.decisionReason ? ` ${batch.decisionReason}` : ''}`,
+    }
+  }
+  if (batch.state === 'resting') return restingFinding(batch)
+  const left = batch.weighings.filter((line) => line.actualG === null)
+  const stepsLeft = batch.steps.filter((step) => step.doneAt === null).length
+  if (left.length) {
+    const done = batch.weighings.length - left.length
+    return {
+      strong: `${done} of ${batch.weighings.length}`,
+      rest: ' lines weighed',
+      sentence: `Phase ${left[0]?.phase} is next. ${stepsLeft} process ${stepsLeft === 1 ? 'step' : 'steps'} to do.`,
+    }
+  }
+  return stepsLeft
+    ? {
+        strong: `${batch.steps.length - stepsLeft} of ${batch.steps.length}`,
+        rest: ' steps done',
+        sentence: 'Everything is weighed.',
+      }
+    : { strong: 'All weighed and made', rest: '', sentence: 'Give the yield, then it rests.' }
+}
+
+function restingFinding(batch: BatchFacts): BatchFinding {
+  const hours = Math.floor(batch.restedHours ?? 0)
+  if (batch.emulsionTypeFound) {
+    return {
+      strong: typeHeadline(batch),
+      rest: '',
+      sentence: `Rested ${hours} h. Release it or reject it.`,
+    }
+  }
+  return {
+    strong: `${hours} h`,
+    rest: ' at rest',
+    sentence:
+      hours < restHours.least
+        ? `It rests ${restHours.least} to ${restHours.most} h; the emulsion-type test comes after that.`
+        : 'Ready for the emulsion-type test.',
+  }
+}
+
+function typeHeadline(batch: BatchFacts): string {
+  if (batch.emulsionTypeFound === 'not clear') return 'Type not clear'
+  return isTypeAsStated(batch.emulsionType, batch.emulsionTypeFound)
+    ? `${sentenceCase(batch.emulsionType)}, as designed`
+    : `Tested ${batch.emulsionTypeFound}, designed ${batch.emulsionType}`
+}
+
+function typeSentence(batch: BatchFacts): string {
+  return batch.emulsionTypeFound ? `${typeHeadline(batch)}.` : ''
+}
+
+/** A test tells which phase is outside; it cannot tell oil from silicone, so either answers for both. */
+export function isTypeAsStated(stated: string, found: string | null): boolean {
+  if (found === stated) return true
+  const outside = (type: string | null) => (type === 'oil-in-water' ? 'water' : 'oil')
+  return found !== null && found !== 'not clear' && outside(stated) === outside(found)
+}
+
+function sentenceCase(text: string): string {
+  return text.charAt(0).toUpperCase() + text.slice(1)
+}

@@ -1,0 +1,113 @@
+import { jsonArrayFrom } from 'kysely/helpers/postgres'
+import type { Actor } from '@/lib/auth/actor'
+import type { Db } from '@/lib/db/client'
+import { refuse } from '@/lib/http/errors'
+import type { EmulsionType } from '../schema'
+
+/** One version of a formula (the latest unless a number is given) with what its page shows: three statements. */
+export async function getFormula(db: Db, _actor: Actor, code: string, number?: number) {
+  const versions = await db
+    .selectFrom('formula')
+    .innerJoin('formulaVersion', 'formulaVersion.formulaId', 'formula.id')
+    .innerJoin('person', 'person.id', 'formulaVersion.createdBy')
+    .leftJoin('client', 'client.id', 'formula.clientId')
+    .select((eb) => [
+      'formula.id as formulaId',
+      'formula.code',
+      'formula.name',
+      'formula.emulsionType',
+      'client.name as clientName',
+      'formulaVersion.id',
+      'formulaVersion.number',
+      'formulaVersion.state',
+      'formulaVersion.note',
+      'formulaVersion.version',
+      'formulaVersion.createdAt',
+      'person.initials as createdBy',
+      jsonArrayFrom(
+        eb
+          .selectFrom('batch')
+          .select(['batch.code', 'batch.state', 'batch.sizeG', 'batch.yieldG', 'batch.createdAt'])
+          .whereRef('batch.formulaVersionId', '=', 'formulaVersion.id')
+          .orderBy('batch.createdAt'),
+      ).as('batches'),
+    ])
+    .where('formula.code', '=', code)
+    .orderBy('formulaVersion.number')
+    .execute()
+  const shown = number ? versions.find((version) => version.number === number) : versions.at(-1)
+  if (!shown) {
+    throw refuse.notFound(
+      versions.length
+        ? `${code} has no version ${number}. Its latest is version ${versions.at(-1)?.number}.`
+        : `There is no formula ${code}. Look for it in the list of formulas.`,
+    )
+  }
+  const before = versions.filter((version) => version.number < shown.number).at(-1)
+  const [lines, steps] = await Promise.all([
+    listLines(db, before ? [shown.id, before.id] : [shown.id]),
+    listSteps(db, shown.id),
+  ])
+  return {
+    id: shown.formulaId,
+    code: shown.code,
+    name: shown.name,
+    emulsionType: shown.emulsionType as EmulsionType,
+    clientName: shown.clientName,
+    versionId: shown.id,
+    number: shown.number,
+    state: shown.state as 'draft' | 'locked',
+    note: shown.note,
+    version: shown.version,
+    createdBy: shown.createdBy,
+    createdAt: shown.createdAt,
+    batches: shown.batches,
+    lines: lines.filter((line) => line.formulaVersionId === shown.id),
+    steps,
+    /** The version before, for "was". */
+    before: before
+      ? { number: before.number, lines: lines.filter((line) => line.formulaVersionId === before.id) }
+      : null,
+    versions: versions.map(({ id, number: n, state, note, createdBy, createdAt, batches }) => ({
+      id,
+      number: n,
+      state,
+      note,
+      createdBy,
+      createdAt,
+      batchCodes: batches.map((batch) => batch.code),
+    })),
+  }
+}
+
+export type FormulaPage = Awaited<ReturnType<typeof getFormula>>
+
+function listLines(db: Db, versionIds: string[]) {
+  return db
+    .selectFrom('formulaLine')
+    .select([
+      'id',
+      'formulaVersionId',
+      'phase',
+      'ingredientId',
+      'inciName',
+      'function',
+      'percentThousandths',
+      'density',
+      'isInternal',
+      'isRemainder',
+      'priceCentsPerKg',
+    ])
+    .where('formulaVersionId', 'in', versionIds)
+    .orderBy('position')
+    .execute()
+}
+
+function listSteps(db: Db, versionId: string) {
+  return db
+    .selectFrom('formulaStep')
+    .select(['id', 'phase', 'instruction', 'speedRpm', 'minutes', 'temperatureC', 'caution'])
+    .where('formulaVersionId', '=', versionId)
+    .orderBy('position')
+    .execute()
+}
