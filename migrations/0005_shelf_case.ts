@@ -12,6 +12,9 @@ export async function up(db: Kysely<any>): Promise<void> {
       proposed_months integer check (proposed_months >= 0),
       storage_statement text not null default '',
       why_fewer text not null default '',
+      study_station_id uuid not null references study_station (id),
+      provisional_rule text not null default '',
+      review_on date,
       period_after_opening_months integer check (period_after_opening_months > 0),
       period_after_opening_evidence text not null default '',
       -- RFC 8785 canonical bytes, frozen when put forward; never jsonb, whose text is not stable.

@@ -1,0 +1,167 @@
+import { Svg, Text, View } from '@react-pdf/renderer'
+import { PdfDrawn } from '@/components/marks/pdf-drawn'
+import { moveShapes } from '@/components/marks/place'
+import { regressionKeyShapes, regressionShapes } from '@/components/shelf-case/regression-shapes'
+import { style } from '@/lib/report/document/page-frame'
+import { text } from '@/lib/report/document/fonts'
+import { dayText, figure, grouped } from '@/lib/report/rules'
+import type { AttributeEvidence, CaseContent } from '@/lib/shelf-case/rules/content'
+import { regressionView } from '@/lib/shelf-case/rules/plot'
+
+const sheetWidth = 511
+
+/** The statistics of every attribute with its curve, the temperature record, and what weakens the case. */
+export function EvidencePages({ content }: { content: CaseContent }) {
+  const curves = content.attributes.filter((a) => a.calc)
+  return (
+    <>
+      <Text style={style.h1}>The statistics</Text>
+      <Text>
+        {curves.length > 0
+          ? 'Regression as in ICH Q1E (2003): batches pooled where slopes, then intercepts, agree (p over 0.25); the confidence bound of the mean line meets the limit.'
+          : 'No attribute has three times in every batch, so no regression is made.'}{' '}
+        {content.cap
+          ? `Cap: ${content.cap.output.rule}; ${content.cap.why} Supported months are whole, rounded down, the least over attributes.`
+          : ''}
+      </Text>
+      <StatisticsTable content={content} />
+      {curves.map((a) => (
+        <Curve key={a.attribute} a={a} content={content} />
+      ))}
+      <Text style={style.h2}>Temperature of {content.station.name}</Text>
+      <Text>{temperatureText(content)}</Text>
+      <Text style={style.h2}>What weakens it</Text>
+      {content.weakens.length === 0 ? <Text>Nothing was noted.</Text> : null}
+      {content.weakens.map((w, i) => (
+        <View key={i} style={style.row} wrap={false}>
+          <Text style={{ width: 62, color: '#333' }}>{w.state}</Text>
+          <View style={{ flex: 1 }}>
+            <Text style={style.bold}>{w.title}</Text>
+            <Text>{w.text}</Text>
+            {w.by ? <Text style={style.soft}>answered by {w.by}</Text> : null}
+          </View>
+        </View>
+      ))}
+    </>
+  )
+}
+
+function StatisticsTable({ content }: { content: CaseContent }) {
+  return (
+    <View style={{ marginTop: 8 }}>
+      <View style={style.headRow}>
+        <Text style={{ width: 84 }}>Attribute</Text>
+        <Text style={{ width: 30, textAlign: 'right' }}>n</Text>
+        <Text style={{ width: 90, paddingLeft: 12 }}>model</Text>
+        <Text style={{ width: 72, textAlign: 'right' }}>slope a month</Text>
+        <Text style={{ width: 56, textAlign: 'right' }}>p, slopes</Text>
+        <Text style={{ width: 64, textAlign: 'right' }}>p, intercepts</Text>
+        <Text style={{ width: 54, textAlign: 'right' }}>bound meets</Text>
+        <Text style={{ flex: 1, textAlign: 'right' }}>decided by</Text>
+      </View>
+      {content.attributes.map((a) => {
+        const out = a.calc?.output
+        const p = (name: string) => {
+          const test = out?.tests?.find((t) => t.name === name)
+          return test
+            ? test.p === null
+              ? 'not known'
+              : test.p < 0.001
+                ? 'under 0.001'
+                : test.p.toFixed(3)
+            : ''
+        }
+        const steepest = out?.batches.find((b) => b.name === out.limitingBatch) ?? out?.batches[0]
+        return (
+          <View key={a.attribute} style={style.row} wrap={false}>
+            <Text style={{ width: 84 }}>{a.label}</Text>
+            <Text style={{ width: 30, textAlign: 'right' }}>{String(a.n)}</Text>
+            <Text style={{ width: 90, paddingLeft: 12 }}>{out?.model ?? 'last passed'}</Text>
+            <Text style={{ width: 72, textAlign: 'right' }}>
+              {steepest ? steepest.slope.toPrecision(3).replace(/^-/, '\u2212') : ''}
+            </Text>
+            <Text style={{ width: 56, textAlign: 'right' }}>{p('slopes')}</Text>
+            <Text style={{ width: 64, textAlign: 'right' }}>{p('intercepts')}</Text>
+            <Text style={{ width: 54, textAlign: 'right' }}>
+              {out ? (a.crossingMonths === null ? 'past 60' : a.crossingMonths.toFixed(1)) : ''}
+            </Text>
+            <Text style={{ flex: 1, textAlign: 'right' }}>{a.decidedBy ?? 'all'}</Text>
+          </View>
+        )
+      })}
+    </View>
+  )
+}
+
+function Curve({ a, content }: { a: AttributeEvidence; content: CaseContent }) {
+  const view = regressionView(a, 60)
+  if (!view || !a.calc) return null
+  const isPercent = view.unit.startsWith('%')
+  const size = { width: 700, height: 250 }
+  const shapes = regressionShapes({
+    ...size,
+    batches: view.batches,
+    lower: view.lower,
+    upper: view.upper,
+    limitText: {
+      ...(view.lower === null ? {} : { lower: `allowed down to ${label(view.lower)}` }),
+      ...(view.upper === null ? {} : { upper: `allowed up to ${label(view.upper)}` }),
+    },
+    dataMonths: content.dataMonths,
+    proposedMonths: content.proposal.months,
+    crossingMonths: a.crossingMonths,
+    crossingSide: a.calc.output.batches.find((b) => b.crossing === a.crossingMonths)?.side ?? null,
+    decides: a.decidedBy,
+    format: label,
+  })
+  function label(y: number): string {
+    return isPercent
+      ? y.toFixed(0)
+      : a.attribute === 'viscosity'
+        ? grouped(y.toPrecision(3))
+        : figure(a.attribute, y)
+  }
+  const scale = sheetWidth / size.width
+  return (
+    <View wrap={false} style={{ marginTop: 10 }}>
+      <Text style={style.h2}>
+        {a.label} <Text style={{ fontWeight: 400, fontSize: 8.5 }}>{view.unit}, by month</Text>
+      </Text>
+      <Svg
+        width={sheetWidth}
+        height={(size.height + 20) * scale}
+        viewBox={`0 0 ${size.width} ${size.height + 20}`}
+      >
+        <PdfDrawn
+          fontFamily={text as unknown as string}
+          shapes={[
+            ...moveShapes(
+              regressionKeyShapes(
+                view.batches.map((b) => b.name),
+                420,
+              ),
+              52,
+              0,
+            ),
+            ...moveShapes(shapes, 0, 20),
+          ]}
+        />
+      </Svg>
+      <Text style={style.soft}>
+        Fitted: {a.scale}. Dashed: carried on by the line. Dotted: its confidence bound.
+      </Text>
+    </View>
+  )
+}
+
+function temperatureText(content: CaseContent): string {
+  const record = content.temperatureRecord
+  if (!record) return 'No temperatures of this station are on record.'
+  const { mktC, meanC, minC, maxC } = record.calc.output
+  const first = `Mean kinetic temperature ${mktC.toFixed(1)} °C, mean ${meanC.toFixed(1)} °C, ${minC.toFixed(1)} to ${maxC.toFixed(1)} °C, from ${record.calc.input.temperaturesC.length} entries (83.144 kJ/mol, USP chapter 1160).`
+  const rest = record.excursions.map(
+    (x) =>
+      `Outside its limits from ${dayText(x.from)}, ${Math.round(x.hours)} h, ${x.worstC.toFixed(1)} °C at the worst.`,
+  )
+  return [first, ...(rest.length > 0 ? rest : ['It did not leave its limits.'])].join(' ')
+}

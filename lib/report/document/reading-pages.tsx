@@ -1,0 +1,59 @@
+import { Text, View } from '@react-pdf/renderer'
+import { style } from '@/lib/report/document/page-frame'
+import { figure, weekText } from '@/lib/report/rules'
+import { attributes, type AttributeKey } from '@/lib/reading/schema/attributes'
+import type { CaseContent, ReadingEvidence } from '@/lib/shelf-case/rules/content'
+
+/** Every reading as typed, those that were corrected or voided struck through with their reason. */
+export function ReadingPages({ content }: { content: CaseContent }) {
+  return (
+    <>
+      <Text style={style.h1}>The readings</Text>
+      <Text>
+        {content.readings.length} readings as they were typed, with who and when. A reading is never changed:
+        a correction or void stands beside it.
+      </Text>
+      <View style={{ marginTop: 8 }}>
+        <View style={style.headRow} fixed>
+          <Text style={{ width: 48 }}>batch</Text>
+          <Text style={{ width: 78 }}>station</Text>
+          <Text style={{ width: 42 }}>jar</Text>
+          <Text style={{ width: 48 }}>time</Text>
+          <Text style={{ width: 66 }}>attribute</Text>
+          <Text style={{ width: 52, textAlign: 'right' }}>typed</Text>
+          <Text style={{ width: 58, textAlign: 'right' }}>value</Text>
+          <Text style={{ width: 80, paddingLeft: 10 }}>measured</Text>
+          <Text style={{ flex: 1 }}>by</Text>
+        </View>
+        {content.readings.map((r, i) => (
+          <Row key={i} r={r} />
+        ))}
+      </View>
+    </>
+  )
+}
+
+function Row({ r }: { r: ReadingEvidence }) {
+  const attribute = attributes[r.attribute as AttributeKey]
+  const isGone = r.state === 'superseded' || r.state === 'void'
+  const struck = isGone ? ({ textDecoration: 'line-through' } as const) : {}
+  return (
+    <View style={[style.row, { fontSize: 7.5, paddingVertical: 1.4 }]} wrap={false}>
+      <Text style={{ width: 48 }}>{r.batch}</Text>
+      <Text style={{ width: 78 }}>{r.station}</Text>
+      <Text style={{ width: 42 }}>{r.jar}</Text>
+      <Text style={{ width: 48 }}>{r.weeks === 0 ? 'initial' : weekText(r.weeks)}</Text>
+      <Text style={{ width: 66 }}>{attribute?.label ?? r.attribute}</Text>
+      <Text style={[{ width: 52, textAlign: 'right' }, struck]}>{r.typed}</Text>
+      <Text style={[{ width: 58, textAlign: 'right' }, struck]}>
+        {r.word ?? (r.value === null ? '' : figure(r.attribute, r.value))}
+      </Text>
+      <Text style={{ width: 80, paddingLeft: 10 }}>{r.measuredAt.slice(0, 16).replace('T', ' ')}</Text>
+      <Text style={{ flex: 1 }}>
+        {r.by}
+        {r.state === 'counts' ? '' : `; ${r.state}`}
+        {r.reason ? `: ${r.reason}` : ''}
+      </Text>
+    </View>
+  )
+}

@@ -1,0 +1,36 @@
+import { TZDate } from '@date-fns/tz'
+import { format } from 'date-fns'
+
+const thin = '\u2009'
+
+/** 2 Mar 2026, 16:42:07 +01:00 in the lab's zone: the form in which a signature's time is shown. */
+export function instantText(iso: string, zone: string): string {
+  return format(new TZDate(iso, zone), 'd MMM yyyy, HH:mm:ss xxx')
+}
+
+export function dayText(iso: string): string {
+  return format(new Date(`${iso.slice(0, 10)}T12:00:00`), 'd MMM yyyy')
+}
+
+/** Thousands with a thin gap: 41 600. */
+export function grouped(value: string): string {
+  const [whole = '', rest] = value.split('.')
+  const spaced = whole.replace(/\B(?=(\d{3})+(?!\d))/g, thin)
+  return rest === undefined ? spaced : `${spaced}.${rest}`
+}
+
+/** pH 2 decimals, viscosity 3 significant figures, percent 1 decimal. */
+export function figure(attribute: string, value: number): string {
+  if (attribute === 'ph') return value.toFixed(2)
+  if (attribute === 'viscosity') return grouped(String(Number(value.toPrecision(3))))
+  return value.toFixed(1).replace(/^-/, '\u2212')
+}
+
+export function weekText(weeks: number): string {
+  return `week ${Math.round(weeks * 10) / 10}`
+}
+
+/** 3b15c039 44019465 …: a hash in groups of eight. */
+export function hashGroups(sha256: string): string[] {
+  return sha256.match(/.{8}/g) ?? []
+}

@@ -1,0 +1,126 @@
+import type { Db, Trx } from '@/lib/db/client'
+import type { Actor } from '@/lib/auth/actor'
+import { refuse } from '@/lib/http/errors'
+import type { ProtocolPlan } from '@/lib/protocol/schema'
+import type { SeriesFinding } from '@/lib/science/series'
+
+export type Evidence = Awaited<ReturnType<typeof loadEvidence>>
+
+/** Everything a case is computed from, in eight statements whatever the size of the study. */
+export async function loadEvidence(db: Db | Trx, actor: Actor, studyId: string) {
+  const study = await db
+    .selectFrom('study')
+    .select(['id', 'code', 'title', 'startedAt', 'startedOn', 'endWeeks', 'plan', 'clientId', 'state'])
+    .where('id', '=', studyId)
+    .executeTakeFirst()
+  if (!study) throw refuse.notFound('There is no such study.')
+  const lab = await db.selectFrom('lab').select(['name', 'timeZone']).executeTakeFirstOrThrow()
+  const batches = await db
+    .selectFrom('studyBatch as sb')
+    .innerJoin('batch as b', 'b.id', 'sb.batchId')
+    .innerJoin('formulaVersion as fv', 'fv.id', 'b.formulaVersionId')
+    .innerJoin('formula as f', 'f.id', 'fv.formulaId')
+    .select(['b.id', 'b.code', 'b.madeAt', 'f.name as formulaName', 'f.emulsionType', 'fv.number'])
+    .where('sb.studyId', '=', studyId)
+    .orderBy('sb.position')
+    .execute()
+  const stations = await db
+    .selectFrom('studyStation as ss')
+    .innerJoin('station as s', 's.id', 'ss.stationId')
+    .select([
+      'ss.id',
+      'ss.stationId',
+      'ss.voice',
+      'ss.isFreezeThaw',
+      'ss.temperatureC',
+      'ss.position',
+      's.name',
+      's.lowC',
+      's.highC',
+    ])
+    .where('ss.studyId', '=', studyId)
+    .orderBy('ss.position')
+    .execute()
+  const series = await db
+    .selectFrom('series')
+    .select(['batchId', 'studyStationId', 'attribute', 'standing', 'used', 'finding'])
+    .where('studyId', '=', studyId)
+    .execute()
+  const readings = await db
+    .selectFrom('reading as r')
+    .innerJoin('person as p', 'p.id', 'r.recordedBy')
+    .leftJoin('jar as j', 'j.id', 'r.jarId')
+    .select([
+      'r.id',
+      'r.batchId',
+      'r.studyStationId',
+      'r.attribute',
+      'r.replicate',
+      'r.value',
+      'r.word',
+      'r.typed',
+      'r.detail',
+      'r.isVoid',
+      'r.supersedesId',
+      'r.reason',
+      'r.measuredAt',
+      'r.recordedAt',
+      'r.recordedBy',
+      'p.initials as by',
+      'j.code as jar',
+    ])
+    .where('r.studyId', '=', studyId)
+    .orderBy('r.measuredAt')
+    .orderBy('r.attribute')
+    .orderBy('r.replicate')
+    .orderBy('r.id')
+    .execute()
+  const flags = await db
+    .selectFrom('flag as f')
+    .leftJoin('person as p', 'p.id', 'f.answeredBy')
+    .select([
+      'f.number',
+      'f.level',
+      'f.rule',
+      'f.state',
+      'f.sentence',
+      'f.why',
+      'f.action',
+      'f.answeredAt',
+      'f.studyStationId',
+      'p.initials as answeredBy',
+    ])
+    .where('f.studyId', '=', studyId)
+    .orderBy('f.number')
+    .execute()
+  const missed = await db
+    .selectFrom('pullJar as pj')
+    .innerJoin('pull', 'pull.id', 'pj.pullId')
+    .innerJoin('jar as j', 'j.id', 'pj.jarId')
+    .select(['j.code as jar', 'pull.label', 'pull.studyStationId', 'pj.missedReason'])
+    .where('pj.studyId', '=', studyId)
+    .where('pj.state', '=', 'missed')
+    .orderBy('pull.timeWeeks')
+    .execute()
+  return {
+    study: { ...study, plan: study.plan as ProtocolPlan },
+    lab,
+    batches,
+    stations,
+    series: series.map((s) => ({ ...s, finding: s.finding as SeriesFinding })),
+    readings: readings.map((r) => ({ ...r, detail: r.detail as Record<string, unknown> })),
+    flags,
+    missed,
+  }
+}
+
+/** Temperatures of a station while the study's jars stood in it. */
+export async function loadTemperatures(db: Db | Trx, stationId: string, from: string) {
+  return db
+    .selectFrom('stationTemperature')
+    .select(['measuredAt', 'temperatureC'])
+    .where('stationId', '=', stationId)
+    .where('measuredAt', '>=', from)
+    .orderBy('measuredAt')
+    .execute()
+}

@@ -1,0 +1,162 @@
+import { createHash } from 'node:crypto'
+import type { Db, Trx } from '@/lib/db/client'
+import type { Actor } from '@/lib/auth/actor'
+import { refuse } from '@/lib/http/errors'
+import { caseStation, computeCase } from '@/lib/shelf-case/rules/build'
+import type { CaseContent } from '@/lib/shelf-case/rules/content'
+import { signatureHash, type SignedFacts } from '@/lib/shelf-case/rules/signature'
+import { loadEvidence, loadTemperatures } from '@/lib/shelf-case/queries/evidence'
+
+export type CaseRow = Awaited<ReturnType<typeof listCases>>[number]
+export type CaseDetail = Awaited<ReturnType<typeof getCase>>
+export type ComputedCase = Awaited<ReturnType<typeof computeFor>>
+
+const columns = [
+  'c.id',
+  'c.code',
+  'c.kind',
+  'c.state',
+  'c.proposedMonths',
+  'c.storageStatement',
+  'c.putForwardAt',
+  'c.createdAt',
+  'c.version',
+  's.code as studyCode',
+  's.title as studyTitle',
+  'p.initials as putForwardBy',
+] as const
+
+/** All cases for the laboratory; for a client only the signed ones of its shared studies. */
+export async function listCases(db: Db | Trx, actor: Actor) {
+  let query = db
+    .selectFrom('shelfCase as c')
+    .innerJoin('study as s', 's.id', 'c.studyId')
+    .leftJoin('person as p', 'p.id', 'c.putForwardBy')
+    .select(columns)
+    .select((eb) =>
+      eb
+        .selectFrom('signature as g')
+        .select('g.signedAt')
+        .whereRef('g.shelfCaseId', '=', 'c.id')
+        .where('g.meaning', '=', 'approve')
+        .orderBy('g.signedAt', 'desc')
+        .limit(1)
+        .as('signedAt'),
+    )
+    .orderBy('c.code', 'desc')
+    .limit(500)
+  if (isOnlyClient(actor))
+    query = query
+      .where('c.state', 'in', ['signed', 'superseded'])
+      .where('s.isShared', '=', true)
+      .where('s.clientId', '=', actor.clientId)
+  return query.execute()
+}
+
+/** One case with its frozen content, its signatures and whether each still belongs to that content. */
+export async function getCase(db: Db | Trx, actor: Actor, code: string) {
+  let query = db
+    .selectFrom('shelfCase as c')
+    .innerJoin('study as s', 's.id', 'c.studyId')
+    .leftJoin('person as p', 'p.id', 'c.putForwardBy')
+    .select(columns)
+    .select([
+      'c.studyId',
+      'c.studyStationId',
+      'c.whyFewer',
+      'c.provisionalRule',
+      'c.reviewOn',
+      'c.periodAfterOpeningMonths',
+      'c.periodAfterOpeningEvidence',
+      'c.content',
+      'c.contentSha256',
+      'c.putForwardBy as putForwardById',
+      'c.createdBy as createdById',
+    ])
+    .where('c.code', '=', code)
+  if (isOnlyClient(actor))
+    query = query
+      .where('c.state', 'in', ['signed', 'superseded'])
+      .where('s.isShared', '=', true)
+      .where('s.clientId', '=', actor.clientId)
+  const found = await query.executeTakeFirst()
+  if (!found) throw refuse.notFound(`There is no case ${code}.`)
+  const signatures = await db
+    .selectFrom('signature')
+    .select([
+      'id',
+      'shelfCaseId',
+      'personId',
+      'personName',
+      'meaning',
+      'comment',
+      'contentSha256',
+      'zone',
+      'signedAt',
+      'signatureSha256',
+    ])
+    .where('shelfCaseId', '=', found.id)
+    .orderBy('signedAt')
+    .execute()
+  const { content, ...facts } = found
+  const contentHash = content === null ? null : createHash('sha256').update(content, 'utf8').digest('hex')
+  return {
+    ...facts,
+    content: content === null ? null : (JSON.parse(content) as CaseContent),
+    isContentWhole: content === null || contentHash === found.contentSha256,
+    signatures: signatures.map((s) => ({ ...s, belongs: signatureBelongs(s, found.code, contentHash) })),
+  }
+}
+
+/** A signature belongs to a content if both its own hash and the content's hash can be made again. */
+export function signatureBelongs(
+  signature: SignedFacts & { signatureSha256: string },
+  caseCode: string,
+  contentHash: string | null,
+): boolean {
+  return (
+    signature.contentSha256 === contentHash &&
+    signatureHash(signature, caseCode) === signature.signatureSha256
+  )
+}
+
+/** What the study's evidence supports now; the same figures that putting forward would freeze. */
+export async function computeFor(db: Db | Trx, actor: Actor, studyId: string, studyStationId: string | null) {
+  const evidence = await loadEvidence(db, actor, studyId)
+  const station = caseStation(evidence, studyStationId)
+  if (!station)
+    throw refuse.conflict(
+      `Study ${evidence.study.code} has no station at 15 to 30 °C that decides, so it cannot carry a shelf life.`,
+    )
+  const temperatures = await loadTemperatures(db, station.stationId, evidence.study.startedAt)
+  return {
+    studyId,
+    studyStationId: station.id,
+    stations: evidence.stations.map((s) => ({
+      id: s.id,
+      name: s.name,
+      temperatureC: s.temperatureC,
+      voice: s.voice,
+    })),
+    readingAuthors: [...new Set(evidence.readings.map((r) => r.recordedBy))],
+    openOut: evidence.flags.filter(
+      (f) => f.level === 'out' && f.state === 'open' && f.studyStationId === station.id,
+    ),
+    computed: computeCase(evidence, station, temperatures),
+  }
+}
+
+/** Who logged, corrected or voided a reading of the study: none of them may sign it. */
+export async function readingAuthors(db: Db | Trx, studyId: string): Promise<string[]> {
+  const rows = await db
+    .selectFrom('reading')
+    .select('recordedBy')
+    .distinct()
+    .where('studyId', '=', studyId)
+    .execute()
+  return rows.map((r) => r.recordedBy)
+}
+
+function isOnlyClient(actor: Actor): boolean {
+  return actor.roles.every((role) => role === 'client')
+}

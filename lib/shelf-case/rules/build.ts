@@ -1,0 +1,266 @@
+import { extrapolationCap } from '@/lib/science/extrapolation-cap'
+import { separation } from '@/lib/science/separation'
+import { protocolPlan } from '@/lib/protocol/schema'
+import type { CaseProposal } from '@/lib/shelf-case/schema'
+import { attributeEvidence, type BatchSeries } from '@/lib/shelf-case/rules/attribute'
+import type {
+  AttributeEvidence,
+  CaseContent,
+  ReadingEvidence,
+  ShelfEvidence,
+} from '@/lib/shelf-case/rules/content'
+import { nominalMonths } from '@/lib/shelf-case/rules/months'
+import { temperatureRecord } from '@/lib/shelf-case/rules/temperature'
+import { weaknesses } from '@/lib/shelf-case/rules/weakness'
+import type { Evidence } from '@/lib/shelf-case/queries/evidence'
+
+export type Computed = Omit<CaseContent, 'case' | 'proposal' | 'putForward'>
+
+type Temperatures = { measuredAt: string; temperatureC: number }[]
+
+const weekMs = 7 * 24 * 3600 * 1000
+
+/** The station that a case speaks for: the warmest that decides at 15 to 30 °C, unless one is named. */
+export function caseStation(evidence: Evidence, studyStationId: string | null) {
+  if (studyStationId) return evidence.stations.find((s) => s.id === studyStationId) ?? null
+  const candidates = evidence.stations.filter(
+    (s) =>
+      s.voice === 'decides' &&
+      !s.isFreezeThaw &&
+      (s.temperatureC ?? 99) >= 15 &&
+      (s.temperatureC ?? 99) <= 30,
+  )
+  return candidates.sort((a, b) => (b.temperatureC ?? 0) - (a.temperatureC ?? 0))[0] ?? null
+}
+
+/** What the evidence supports at one station: pure, so that the page and the freezing give the same figures. */
+export function computeCase(
+  evidence: Evidence,
+  station: Evidence['stations'][number],
+  temperatures: Temperatures,
+): Computed {
+  const plan = protocolPlan.parse(evidence.study.plan)
+  const started = Date.parse(evidence.study.startedAt)
+  const weeksOf = (iso: string) => (Date.parse(iso) - started) / weekMs
+  const superseded = new Set(evidence.readings.flatMap((r) => (r.supersedesId ? [r.supersedesId] : [])))
+  const standing = evidence.readings.filter((r) => !r.isVoid && !superseded.has(r.id))
+  const atStation = evidence.series.filter((s) => s.studyStationId === station.id)
+  const dataMonths = Math.min(
+    ...evidence.batches.map((b) =>
+      Math.max(
+        0,
+        ...atStation
+          .filter((s) => s.batchId === b.id)
+          .flatMap((s) => s.finding.points.filter((p) => p.counted).map((p) => nominalMonths(p.time))),
+      ),
+    ),
+  )
+  const cap = capOf(evidence, station, dataMonths)
+  const batchSeries = (attribute: string): BatchSeries[] =>
+    evidence.batches.flatMap((b) => {
+      const found = atStation.find((s) => s.batchId === b.id && s.attribute === attribute)
+      if (!found) return []
+      const counted = new Set(found.finding.points.filter((p) => p.counted).flatMap((p) => p.readingIds))
+      return {
+        batch: b.code,
+        finding: found.finding,
+        observations: standing
+          .filter(
+            (r) =>
+              r.batchId === b.id &&
+              r.attribute === attribute &&
+              r.value !== null &&
+              (r.studyStationId === null || (r.studyStationId === station.id && counted.has(r.id))),
+          )
+          .map((r) => ({
+            weeks: r.studyStationId === null ? 0 : weeksOf(r.measuredAt),
+            value: r.value ?? 0,
+          })),
+      }
+    })
+  const attributes = plan.attributes
+    .map((planned) => ({ planned, series: batchSeries(planned.attribute) }))
+    .filter(({ series }) => series.length > 0)
+    .map(({ planned, series }) => attributeEvidence(planned, series, cap.output.capMonths))
+  const limiting = attributes.reduce<AttributeEvidence | null>(
+    (least, a) => (least === null || a.supportedMonths < least.supportedMonths ? a : least),
+    null,
+  )
+  const record = temperatureRecord(station, temperatures)
+  const missing = evidence.missed.map((m) => ({
+    jar: m.jar,
+    station: evidence.stations.find((s) => s.id === m.studyStationId)?.name ?? '',
+    label: m.label,
+    reason: m.missedReason ?? '',
+  }))
+  const lastRead = standing.at(-1)?.measuredAt ?? evidence.study.startedAt
+  return {
+    format: 'stillstand-case-1',
+    lab: { name: evidence.lab.name, timeZone: evidence.lab.timeZone },
+    study: {
+      code: evidence.study.code,
+      title: evidence.study.title,
+      startedOn: evidence.study.startedOn,
+      lastReadOn: lastRead.slice(0, 10),
+      endWeeks: evidence.study.endWeeks,
+    },
+    batches: evidence.batches.map((b) => ({
+      code: b.code,
+      formula: `${b.formulaName}, version ${b.number}`,
+      emulsionType: b.emulsionType,
+      madeOn: b.madeAt?.slice(0, 10) ?? null,
+    })),
+    station: {
+      name: station.name,
+      temperatureC: station.temperatureC ?? 0,
+      voice: station.voice,
+      timePointsMonths: timePointsOf(plan, station).map(nominalMonths),
+    },
+    supportedMonths: limiting?.supportedMonths ?? 0,
+    limitingAttribute: limiting?.attribute ?? null,
+    dataMonths,
+    cap,
+    attributes,
+    shelves: shelvesOf(evidence),
+    temperatureRecord: record,
+    weakens: weaknesses({ evidence, station, attributes, record, missing, dataMonths }),
+    missing,
+    readings: readingTable(evidence, superseded, weeksOf),
+  }
+}
+
+function timePointsOf(plan: ReturnType<typeof protocolPlan.parse>, station: Evidence['stations'][number]) {
+  const planned = plan.stations.find(
+    (s) => (s.kind === 'freeze-thaw') === station.isFreezeThaw && s.temperatureC === station.temperatureC,
+  )
+  return [0, ...(planned?.timePoints ?? [])]
+}
+
+/**
+ * The cap of ICH Q1E's decision tree. Significant change at accelerated counts as shown absent only after six
+ * months of it without a series out [std: ICH Q1A(R2)]; anything less is taken as change, which allows less.
+ */
+function capOf(evidence: Evidence, station: Evidence['stations'][number], dataMonths: number) {
+  const isUnchanged = (low: number, high: number) => {
+    const there = evidence.stations.filter(
+      (s) =>
+        !s.isFreezeThaw &&
+        s.id !== station.id &&
+        (s.temperatureC ?? -99) >= low &&
+        (s.temperatureC ?? -99) <= high,
+    )
+    return there.some((s) => {
+      const series = evidence.series.filter((x) => x.studyStationId === s.id)
+      const months = Math.max(0, ...series.flatMap((x) => x.finding.points.map((p) => nominalMonths(p.time))))
+      return months >= 6 && series.every((x) => x.standing !== 'out')
+    })
+  }
+  const acceleratedChange = !isUnchanged(38, 42)
+  const intermediateChange = !isUnchanged(28, 32)
+  const t = station.temperatureC ?? 25
+  const input: Parameters<typeof extrapolationCap>[0] = {
+    dataMonths,
+    storage: t < 0 ? 'frozen' : t <= 8 ? 'refrigerated' : 'room',
+    acceleratedChange,
+    intermediateChange,
+    variable: true,
+    statistics: true,
+  }
+  const why = acceleratedChange
+    ? 'Six months at 40 °C without significant change are not shown.'
+    : 'Six months at 40 °C without significant change.'
+  return { input, output: extrapolationCap(input), why }
+}
+
+function shelvesOf(evidence: Evidence): ShelfEvidence[] {
+  return evidence.stations.flatMap((s) =>
+    evidence.batches.flatMap((b) => {
+      const found = evidence.series.find(
+        (x) => x.studyStationId === s.id && x.batchId === b.id && x.attribute === 'separation',
+      )
+      if (!found) return []
+      const layersOf = (ids: string[]) => {
+        const worst = evidence.readings
+          .filter((r) => ids.includes(r.id))
+          .sort((x, y) => (y.value ?? 0) - (x.value ?? 0))[0]
+        const mm = (key: string) =>
+          typeof worst?.detail[key] === 'number' ? (worst.detail[key] as number) : 0
+        if (mm('totalMm') <= 0) return { topPercent: 0, bottomPercent: worst?.value ?? 0 }
+        const { topPercent, bottomPercent } = separation({
+          totalMm: mm('totalMm'),
+          topMm: mm('topMm'),
+          bottomMm: mm('bottomMm'),
+        })
+        return { topPercent, bottomPercent }
+      }
+      return {
+        label: s.isFreezeThaw ? 'freeze-thaw' : `${s.temperatureC}`,
+        temperatureC: s.temperatureC,
+        isFreezeThaw: s.isFreezeThaw,
+        voice: s.voice,
+        batch: b.code,
+        jars: found.finding.points.map((p) => ({
+          months: nominalMonths(p.time),
+          ...layersOf(p.readingIds),
+          percent: p.mean,
+          standing: p.standing,
+        })),
+      }
+    }),
+  )
+}
+
+function readingTable(
+  evidence: Evidence,
+  superseded: Set<string>,
+  weeksOf: (iso: string) => number,
+): ReadingEvidence[] {
+  const uncounted = new Set(
+    evidence.series.flatMap((s) => s.finding.points.filter((p) => !p.counted).flatMap((p) => p.readingIds)),
+  )
+  return evidence.readings.map((r) => ({
+    batch: evidence.batches.find((b) => b.id === r.batchId)?.code ?? '',
+    station: evidence.stations.find((s) => s.id === r.studyStationId)?.name ?? 'initial',
+    jar: r.jar ?? '',
+    weeks: r.studyStationId === null ? 0 : weeksOf(r.measuredAt),
+    attribute: r.attribute,
+    replicate: r.replicate,
+    typed: r.typed,
+    value: r.value,
+    word: r.word,
+    measuredAt: r.measuredAt,
+    recordedAt: r.recordedAt,
+    by: r.by,
+    state: superseded.has(r.id)
+      ? 'superseded'
+      : r.isVoid
+        ? 'void'
+        : uncounted.has(r.id)
+          ? 'does not count'
+          : 'counts',
+    reason: r.reason,
+  }))
+}
+
+/** The frozen content: what was computed, what is proposed, and who puts it forward. */
+export function freeze(
+  computed: Computed,
+  code: string,
+  proposal: CaseProposal,
+  putForward: CaseContent['putForward'],
+): CaseContent {
+  return {
+    ...computed,
+    case: { code, kind: proposal.kind },
+    proposal: {
+      months: proposal.proposedMonths,
+      storageStatement: proposal.storageStatement,
+      whyFewer: proposal.whyFewer,
+      provisionalRule: proposal.provisionalRule,
+      reviewOn: proposal.reviewOn,
+      periodAfterOpeningMonths: proposal.periodAfterOpeningMonths,
+      periodAfterOpeningEvidence: proposal.periodAfterOpeningEvidence,
+    },
+    putForward,
+  }
+}

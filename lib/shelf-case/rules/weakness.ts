@@ -1,0 +1,75 @@
+import type {
+  AttributeEvidence,
+  CaseContent,
+  TemperatureRecord,
+  Weakness,
+} from '@/lib/shelf-case/rules/content'
+import type { Evidence } from '@/lib/shelf-case/queries/evidence'
+
+/** What a reviewer has to weigh, worst first: doubts that stand, then those answered, then what is missing. */
+export function weaknesses(from: {
+  evidence: Evidence
+  station: Evidence['stations'][number]
+  attributes: AttributeEvidence[]
+  record: TemperatureRecord | null
+  missing: CaseContent['missing']
+  dataMonths: number
+}): Weakness[] {
+  const stands: Weakness[] = []
+  for (const a of from.attributes) {
+    const slopes = a.calc?.output.tests?.find((t) => t.name === 'slopes')
+    if (slopes && !slopes.pooled)
+      stands.push({
+        state: 'stands',
+        title: `Batches differ in ${a.label === 'pH' ? 'pH' : a.label.toLowerCase()}`,
+        text: `Slopes p ${slopes.p === null ? 'not known' : slopes.p.toFixed(3)}, under 0.25: no pooling, and ${a.decidedBy ?? 'the worst batch'} decides alone.`,
+        by: null,
+      })
+  }
+  const beyond = from.attributes.filter((a) => a.supportedMonths > from.dataMonths)
+  if (beyond.length > 0)
+    stands.push({
+      state: 'stands',
+      title: 'Some months may lie past the data',
+      text: `The data end at month ${Math.floor(from.dataMonths)}; ${beyond.map((a) => a.label).join(', ')} ${beyond.length === 1 ? 'is' : 'are'} carried on by a line.`,
+      by: null,
+    })
+  if (from.evidence.batches.length < 3)
+    stands.push({
+      state: 'stands',
+      title: from.evidence.batches.length === 1 ? 'One batch only' : 'Two batches only',
+      text: 'Batches may differ more than this study can show. Three are usual for a date [practice].',
+      by: null,
+    })
+  if (from.record === null)
+    stands.push({
+      state: 'stands',
+      title: `No temperature record of ${from.station.name}`,
+      text: 'Nothing shows at what temperature the jars stood.',
+      by: null,
+    })
+  for (const x of from.record?.excursions ?? [])
+    stands.push({
+      state: 'stands',
+      title: `${from.station.name} left its limits`,
+      text: `${Math.round(x.hours)} h from ${x.from.slice(0, 10)}, ${x.worstC.toFixed(1)} °C at the worst. Mean kinetic temperature does not excuse it.`,
+      by: null,
+    })
+  for (const f of from.evidence.flags.filter((f) => f.state === 'open'))
+    stands.push({ state: 'stands', title: `Flag ${f.number} is open`, text: f.sentence, by: null })
+  const answered = from.evidence.flags
+    .filter((f) => f.state !== 'open')
+    .map((f): Weakness => ({
+      state: 'answered',
+      title: `Flag ${f.number}`,
+      text: [f.sentence, f.why].filter(Boolean).join(' '),
+      by: f.answeredBy && f.answeredAt ? `${f.answeredBy}, ${f.answeredAt.slice(0, 10)}` : null,
+    }))
+  const missing = from.missing.map((m): Weakness => ({
+    state: 'missing',
+    title: `${m.jar}, ${m.label}: not read`,
+    text: m.reason,
+    by: null,
+  }))
+  return [...stands, ...answered, ...missing]
+}
