@@ -89,6 +89,7 @@ export async function up(db: Kysely<any>): Promise<void> {
       state text not null default 'running' check (state in ('running','closed')),
       started_at timestamptz not null,
       started_on date not null,
+      ended_on date,
       end_weeks numeric not null,
       fill_g numeric not null,
       version integer not null default 1,

@@ -44,11 +44,15 @@ export type PlannedAttribute = z.infer<typeof plannedAttribute>
 
 export const plannedStation = z.object({
   /** Which kind of place it needs; the study picks the lab's station that fits. */
-  kind: z.enum(['temperature', 'freeze-thaw']),
+  kind: z.enum(['temperature', 'freeze-thaw', 'transport']),
   temperatureC: z.number().nullable(),
   voice: z.enum(['decides', 'informs', 'supports']),
-  /** Weeks after the start, without 0; for freeze-thaw the weeks at which the cycles end. */
-  timePoints: z.array(z.number().positive().max(520)).min(1).max(60),
+  /** Weeks after the start, without 0; for freeze-thaw the weeks at which the cycles end. A draft may have none. */
+  timePoints: z
+    .array(z.number().positive('A time point lies after the start.').max(520))
+    .max(60)
+    .refine((weeks) => new Set(weeks).size === weeks.length, 'A time point stands twice.')
+    .transform((weeks) => weeks.toSorted((a, b) => a - b)),
   windowDays: z.number().int().min(0).max(30),
   watchJars: z.number().int().min(0).max(5),
   measuringJarsPerPull: z.number().int().min(0).max(5),
@@ -65,7 +69,46 @@ export const protocolPlan = z.object({
   retains: z.number().int().min(0).max(50),
   initialJars: z.number().int().min(0).max(20),
   pack: z.string().max(200),
-  stations: z.array(plannedStation).min(1).max(12),
-  attributes: z.array(plannedAttribute).min(1).max(20),
+  stations: z.array(plannedStation).max(12),
+  attributes: z
+    .array(plannedAttribute)
+    .max(20)
+    .refine(
+      (list) => new Set(list.map((a) => a.attribute)).size === list.length,
+      'An attribute stands twice.',
+    ),
 })
 export type ProtocolPlan = z.infer<typeof protocolPlan>
+
+const name = z.string().trim().min(1, 'Give the protocol a name.').max(120)
+const note = z.string().trim().max(2000).default('')
+
+export const newProtocol = z.object({
+  id: z.uuid(),
+  versionId: z.uuid(),
+  name,
+  plan: protocolPlan,
+  note,
+})
+export type NewProtocol = z.input<typeof newProtocol>
+
+/** A new draft, begun from the newest version; a locked version never changes. */
+export const newProtocolVersion = z.object({ id: z.uuid() })
+
+export const writtenPlan = z.object({
+  version: z.number().int().positive(),
+  name,
+  plan: protocolPlan,
+  note,
+})
+export type WrittenPlan = z.input<typeof writtenPlan>
+
+export const protocolAddress = z.object({ code: z.string().max(40) })
+export const protocolVersionAddress = protocolAddress.extend({ number: z.coerce.number().int().positive() })
+
+export const protocolKeys = {
+  list: '/api/protocols',
+  one: (code: string) => `/api/protocols/${encodeURIComponent(code)}`,
+  versions: (code: string) => `/api/protocols/${encodeURIComponent(code)}/versions`,
+  version: (code: string, number: number) => `/api/protocols/${encodeURIComponent(code)}/versions/${number}`,
+}

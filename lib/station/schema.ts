@@ -1,0 +1,82 @@
+import { z } from '@/lib/http/zod'
+
+const degrees = z.number().gt(-273.15, 'That is below absolute zero.').max(400).nullable()
+
+/** What a manager says of a place where jars stand. */
+const stationFields = {
+  name: z.string().trim().min(1, 'Give the station a name.').max(80),
+  kind: z.enum(['temperature', 'freeze-thaw', 'transport']),
+  temperatureC: degrees,
+  lowC: degrees,
+  highC: degrees,
+  humidityPercent: z.number().min(0).max(100).nullable().default(null),
+  cycleLowC: degrees.default(null),
+  cycleHighC: degrees.default(null),
+  walkOrder: z.number().int().min(1).max(999),
+  shelves: z.number().int().min(1).max(99),
+  placesPerShelf: z.number().int().min(1).max(500),
+  caution: z.string().trim().max(500).default(''),
+}
+
+type Limits = {
+  kind: 'temperature' | 'freeze-thaw' | 'transport'
+  temperatureC: number | null
+  lowC: number | null
+  highC: number | null
+  cycleLowC: number | null
+  cycleHighC: number | null
+}
+
+function limitsMakeSense(station: Limits, context: z.RefinementCtx): void {
+  const fault = (path: string, message: string) => context.addIssue({ code: 'custom', path: [path], message })
+  if (station.kind === 'temperature' && station.temperatureC === null)
+    fault('temperatureC', 'Give the temperature that this station keeps.')
+  if (station.lowC !== null && station.highC !== null && station.lowC >= station.highC)
+    fault('highC', 'The upper limit must lie above the lower one.')
+  if (station.temperatureC !== null && station.lowC !== null && station.temperatureC < station.lowC)
+    fault('lowC', 'The lower limit lies above the temperature itself.')
+  if (station.temperatureC !== null && station.highC !== null && station.temperatureC > station.highC)
+    fault('highC', 'The upper limit lies below the temperature itself.')
+  if (station.kind === 'freeze-thaw' && (station.cycleLowC === null || station.cycleHighC === null))
+    fault('cycleLowC', 'Give both temperatures of the cycle.')
+  if (station.cycleLowC !== null && station.cycleHighC !== null && station.cycleLowC >= station.cycleHighC)
+    fault('cycleHighC', 'The warm half must be warmer than the cold half.')
+}
+
+export const newStation = z.object({ id: z.uuid(), ...stationFields }).superRefine(limitsMakeSense)
+export type NewStation = z.input<typeof newStation>
+
+export const changedStation = z
+  .object({ version: z.number().int().positive(), isActive: z.boolean(), ...stationFields })
+  .superRefine(limitsMakeSense)
+export type ChangedStation = z.input<typeof changedStation>
+
+export const loggedTemperatures = z.object({
+  readings: z
+    .array(
+      z.object({
+        id: z.uuid(),
+        measuredAt: z.iso.datetime({ offset: true }),
+        temperatureC: z
+          .number('Give the temperature as a number.')
+          .gt(-273.15, 'That is below absolute zero.')
+          .max(400, 'That is hotter than any station.'),
+        source: z.enum(['typed', 'logger']).default('typed'),
+      }),
+    )
+    .min(1)
+    .max(5000),
+})
+export type LoggedTemperatures = z.input<typeof loggedTemperatures>
+
+export const stationAddress = z.object({ id: z.uuid() })
+export const stationRecordPeriod = z.object({
+  from: z.iso.datetime({ offset: true }).optional(),
+  to: z.iso.datetime({ offset: true }).optional(),
+})
+
+export const stationKeys = {
+  list: '/api/stations',
+  one: (id: string) => `/api/stations/${id}`,
+  record: (id: string) => `/api/stations/${id}/temperatures`,
+}

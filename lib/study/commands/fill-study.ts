@@ -1,0 +1,177 @@
+import { sql } from 'kysely'
+import type { Actor } from '@/lib/auth/actor'
+import type { Trx } from '@/lib/db/client'
+import { newId } from '@/lib/db/id'
+import { jarCodes } from '@/lib/jar/rules'
+import type { ProtocolPlan } from '@/lib/protocol/schema'
+import { listTakenPlaces } from '@/lib/station/queries'
+import { freePlaces } from '@/lib/station/rules'
+import { pullsOf } from '@/lib/study/rules/calendar'
+import type { InitialRow } from '@/lib/study/rules/initial'
+import { plannedJars } from '@/lib/study/rules/jars'
+
+// What a started study consists of: one statement a table, whatever the number of jars.
+
+export async function insertBatches(trx: Trx, studyId: string, batchIds: string[]): Promise<void> {
+  await trx
+    .insertInto('studyBatch')
+    .values(batchIds.map((batchId, position) => ({ id: newId(), studyId, batchId, position })))
+    .execute()
+}
+
+export type StudyStation = { id: string; stationId: string; shelves: number; placesPerShelf: number }
+
+export async function insertStations(
+  trx: Trx,
+  studyId: string,
+  plan: ProtocolPlan,
+  stations: { id: string; shelves: number; placesPerShelf: number }[],
+): Promise<StudyStation[]> {
+  const rows = stations.map((station) => ({ ...station, stationId: station.id, id: newId() }))
+  await trx
+    .insertInto('studyStation')
+    .values(
+      rows.map(({ id, stationId }, position) => ({
+        id,
+        studyId,
+        stationId,
+        position,
+        voice: plan.stations[position]!.voice,
+        isFreezeThaw: plan.stations[position]!.kind === 'freeze-thaw',
+        temperatureC: plan.stations[position]!.temperatureC,
+      })),
+    )
+    .execute()
+  return rows
+}
+
+type PullRow = { id: string; position: number; timeWeeks: number }
+
+export async function insertPulls(
+  trx: Trx,
+  studyId: string,
+  plan: ProtocolPlan,
+  stations: StudyStation[],
+  startedOn: string,
+): Promise<PullRow[]> {
+  const rows = plan.stations.flatMap((station, position) =>
+    pullsOf(station, startedOn, plan.endWeeks).map((pull) => ({ ...pull, id: newId(), position })),
+  )
+  await trx
+    .insertInto('pull')
+    .values(
+      rows.map(({ position, ...pull }) => ({ ...pull, studyId, studyStationId: stations[position]!.id })),
+    )
+    .execute()
+  return rows
+}
+
+type JarRow = { id: string; position: number | null; kind: string; weeks: number[] }
+
+export async function insertJars(
+  trx: Trx,
+  studyId: string,
+  plan: ProtocolPlan,
+  batches: { id: string }[],
+  stations: StudyStation[],
+  random: () => number,
+): Promise<JarRow[]> {
+  const planned = plannedJars(
+    plan,
+    batches.map((batch) => batch.id),
+  )
+  const codes = await freeCodes(trx, planned.length, random)
+  const taken = await listTakenPlaces(
+    trx,
+    stations.map((station) => station.stationId),
+  )
+  const places = stations.map((station, position) =>
+    freePlaces(
+      station,
+      taken.filter((place) => place.stationId === station.stationId),
+      planned.filter((jar) => jar.position === position).length,
+    ),
+  )
+  const rows = planned.map((jar, index) => ({
+    ...jar,
+    id: newId(),
+    code: codes[index]!,
+    spot: jar.position === null ? undefined : places[jar.position]!.shift(),
+  }))
+  await trx
+    .insertInto('jar')
+    .values(
+      rows.map(({ id, code, batchId, position, kind, state, spot }) => ({
+        id,
+        code,
+        studyId,
+        batchId,
+        studyStationId: position === null ? null : stations[position]!.id,
+        kind,
+        state,
+        shelf: spot?.shelf ?? null,
+        place: spot?.place ?? null,
+        fillHeightMm: plan.fillHeightMm,
+      })),
+    )
+    .execute()
+  return rows
+}
+
+/** A few more than needed, so that the odd code that is already on a jar costs no second question. */
+async function freeCodes(trx: Trx, count: number, random: () => number): Promise<string[]> {
+  const free = new Set<string>()
+  while (free.size < count) {
+    const drawn = jarCodes(count - free.size + 20, random)
+    const taken = await trx
+      .selectFrom('jar')
+      .select('code')
+      .where('code', '=', sql<string>`any(${drawn})`)
+      .execute()
+    const used = new Set(taken.map((jar) => jar.code))
+    drawn.filter((code) => !used.has(code)).forEach((code) => free.add(code))
+  }
+  return [...free].slice(0, count)
+}
+
+export async function insertPullJars(
+  trx: Trx,
+  studyId: string,
+  jars: JarRow[],
+  pulls: PullRow[],
+): Promise<void> {
+  const pullAt = new Map(pulls.map((pull) => [`${pull.position} ${pull.timeWeeks}`, pull.id]))
+  const rows = jars.flatMap((jar) =>
+    jar.weeks.map((week) => ({
+      id: newId(),
+      pullId: pullAt.get(`${jar.position} ${week}`)!,
+      jarId: jar.id,
+      studyId,
+      asks: jar.kind === 'watch' ? 'watch' : 'measuring',
+    })),
+  )
+  await trx.insertInto('pullJar').values(rows).execute()
+}
+
+export async function insertInitial(
+  trx: Trx,
+  actor: Actor,
+  studyId: string,
+  initial: InitialRow[],
+  startedAt: string,
+): Promise<void> {
+  if (initial.length === 0) return
+  await trx
+    .insertInto('reading')
+    .values(
+      initial.map((row) => ({
+        id: newId(),
+        studyId,
+        recordedBy: actor.personId,
+        ...row,
+        detail: JSON.stringify(row.detail),
+        measuredAt: row.measuredAt ?? startedAt,
+      })),
+    )
+    .execute()
+}

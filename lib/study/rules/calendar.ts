@@ -1,0 +1,58 @@
+import { pullLabel } from '@/lib/protocol/rules/plan'
+import type { PlannedStation } from '@/lib/protocol/schema'
+
+export type PlannedPull = {
+  timeWeeks: number
+  label: string
+  dueOn: string
+  windowFrom: string
+  windowTo: string
+}
+
+/** The pulls of one station: days are dates of the lab's calendar, so no clock change moves them. */
+export function pullsOf(station: PlannedStation, startedOn: string, endWeeks: number): PlannedPull[] {
+  return station.timePoints.map((timeWeeks) => {
+    const dueOn = addDays(startedOn, Math.round(timeWeeks * 7))
+    return {
+      timeWeeks,
+      label: pullLabel(station, timeWeeks, endWeeks),
+      dueOn,
+      windowFrom: addDays(dueOn, -station.windowDays),
+      windowTo: addDays(dueOn, station.windowDays),
+    }
+  })
+}
+
+export function addDays(day: string, days: number): string {
+  const date = new Date(`${day}T00:00:00Z`)
+  date.setUTCDate(date.getUTCDate() + days)
+  return date.toISOString().slice(0, 10)
+}
+
+export function weeksBetween(from: string, to: string): number {
+  return (
+    (Date.parse(`${to.slice(0, 10)}T00:00:00Z`) - Date.parse(`${from.slice(0, 10)}T00:00:00Z`)) / 604_800_000
+  )
+}
+
+/** The day an instant falls on in the lab. */
+export function dayIn(timeZone: string, instant: string): string {
+  return new Intl.DateTimeFormat('en-CA', {
+    timeZone,
+    year: 'numeric',
+    month: '2-digit',
+    day: '2-digit',
+  }).format(new Date(instant))
+}
+
+/** "2 Mar 2026"; without the year where it goes without saying. */
+export function spokenDay(day: string, withYear = true): string {
+  return new Intl.DateTimeFormat('en-GB', {
+    timeZone: 'UTC',
+    day: 'numeric',
+    month: 'short',
+    ...(withYear ? { year: 'numeric' } : {}),
+  })
+    .format(new Date(`${day.slice(0, 10)}T00:00:00Z`))
+    .replace('Sept', 'Sep')
+}

@@ -1,0 +1,42 @@
+import type { ProtocolPlan } from '@/lib/protocol/schema'
+
+export type PlannedJar = {
+  batchId: string
+  /** Position of its station in the plan; null for the jars of the initial and for retains. */
+  position: number | null
+  kind: 'watch' | 'measuring' | 'spare' | 'retain'
+  state: 'stored' | 'spent' | 'kept'
+  /** Weeks at which it is asked for: all of its station's for a watch jar, one for a measuring jar. */
+  weeks: number[]
+}
+
+/** Every jar of a study: what it is for, where it stands, when it is asked for. */
+export function plannedJars(plan: ProtocolPlan, batchIds: string[]): PlannedJar[] {
+  return batchIds.flatMap((batchId) => [
+    ...plan.stations.flatMap((station, position) => [
+      ...times(station.watchJars, () => stored(batchId, position, 'watch', station.timePoints)),
+      ...station.timePoints.flatMap((week) =>
+        times(station.measuringJarsPerPull, () => stored(batchId, position, 'measuring', [week])),
+      ),
+      ...times(station.spares, () => stored(batchId, position, 'spare', [])),
+    ]),
+    ...times(plan.initialJars, (): PlannedJar => ({
+      ...nowhere(batchId),
+      kind: 'measuring',
+      state: 'spent',
+    })),
+    ...times(plan.retains, (): PlannedJar => ({ ...nowhere(batchId), kind: 'retain', state: 'kept' })),
+  ])
+}
+
+function stored(batchId: string, position: number, kind: PlannedJar['kind'], weeks: number[]): PlannedJar {
+  return { batchId, position, kind, state: 'stored', weeks }
+}
+
+function nowhere(batchId: string) {
+  return { batchId, position: null, weeks: [] }
+}
+
+function times<T>(count: number, make: () => T): T[] {
+  return Array.from({ length: count }, make)
+}

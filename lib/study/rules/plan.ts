@@ -1,0 +1,83 @@
+import { jarsOfPlan, weeksOfPlan } from '@/lib/protocol/rules/plan'
+import type { ProtocolPlan } from '@/lib/protocol/schema'
+import type { StudyAdjustments } from '@/lib/study/schema'
+
+export type FitOption = {
+  kind: 'fill' | 'weeks' | 'retains'
+  label: string
+  adjustments: StudyAdjustments
+  jars: number
+  grams: number
+  /** Grams left over; negative where some are still missing. */
+  leftG: number
+}
+
+/** The protocol's plan as this study follows it. */
+export function adjustedPlan(plan: ProtocolPlan, adjustments: StudyAdjustments): ProtocolPlan {
+  const without = new Set(adjustments.leaveOutWeeks ?? [])
+  return {
+    ...plan,
+    fillG: adjustments.fillG ?? plan.fillG,
+    retains: adjustments.leaveOutRetains ? 0 : plan.retains,
+    // Cycles are counted, so none of them can be left out.
+    stations: plan.stations.map((station) =>
+      station.kind === 'temperature'
+        ? { ...station, timePoints: station.timePoints.filter((week) => !without.has(week)) }
+        : station,
+    ),
+  }
+}
+
+/** What would make a study fit a batch: less in each jar, fewer early weeks, no retains. */
+export function waysToFit(plan: ProtocolPlan, batchG: number): FitOption[] {
+  const options = [lessFill(plan, batchG), fewerWeeks(plan, batchG), withoutRetains(plan)]
+  return options
+    .filter((option) => option !== null)
+    .map(({ kind, label, adjustments }) => {
+      const { jars, grams } = jarsOfPlan(adjustedPlan(plan, adjustments), batchG)
+      return { kind, label, adjustments, jars, grams, leftG: batchG - grams }
+    })
+}
+
+type Way = Pick<FitOption, 'kind' | 'label' | 'adjustments'>
+
+/** Half the fill at least: below that the jar is another pack. */
+function lessFill(plan: ProtocolPlan, batchG: number): Way | null {
+  const { jars } = jarsOfPlan(plan, batchG)
+  const fillG = Math.floor(((batchG * (1 - plan.lossPercent / 100)) / jars) * 10) / 10
+  if (fillG < plan.fillG / 2 || fillG >= plan.fillG) return null
+  const label = `Fill ${fillG.toFixed(1)} g instead of ${plan.fillG.toFixed(1)} g`
+  return { kind: 'fill', label, adjustments: { fillG } }
+}
+
+/** Odd weeks first, then even ones, from the start on; the last pull of each station stays. */
+function fewerWeeks(plan: ProtocolPlan, batchG: number): Way | null {
+  const last = new Set(plan.stations.map((station) => station.timePoints.at(-1)))
+  const early = weeksOfPlan(plan).filter(
+    (week) =>
+      !last.has(week) && plan.stations.some((s) => s.kind === 'temperature' && s.timePoints.includes(week)),
+  )
+  const inOrder = [...early.filter((week) => week % 2 === 1), ...early.filter((week) => week % 2 !== 1)]
+  const leaveOutWeeks: number[] = []
+  for (const week of inOrder.slice(0, Math.max(1, inOrder.length - 2))) {
+    leaveOutWeeks.push(week)
+    if (jarsOfPlan(adjustedPlan(plan, { leaveOutWeeks }), batchG).fits) break
+  }
+  if (leaveOutWeeks.length === 0) return null
+  leaveOutWeeks.sort((a, b) => a - b)
+  return {
+    kind: 'weeks',
+    label: `Leave out ${leaveOutWeeks.length === 1 ? 'week' : 'weeks'} ${listed(leaveOutWeeks.map(String))}`,
+    adjustments: { leaveOutWeeks },
+  }
+}
+
+function withoutRetains(plan: ProtocolPlan): Way | null {
+  if (plan.retains === 0) return null
+  const label = `Leave out the ${plan.retains === 1 ? 'retain jar' : `${plan.retains} retain jars`}`
+  return { kind: 'retains', label, adjustments: { leaveOutRetains: true } }
+}
+
+function listed(items: string[]): string {
+  return items.length < 2 ? (items[0] ?? '') : `${items.slice(0, -1).join(', ')} and ${items.at(-1)}`
+}

@@ -1,0 +1,63 @@
+import { attributes, type AttributeKey } from '@/lib/reading/schema/attributes'
+
+const small = [
+  'no',
+  'one',
+  'two',
+  'three',
+  'four',
+  'five',
+  'six',
+  'seven',
+  'eight',
+  'nine',
+  'ten',
+  'eleven',
+  'twelve',
+]
+
+/** Up to twelve in words, as one speaks. */
+export function numberWord(count: number): string {
+  return small[count] ?? grouped(String(count))
+}
+
+/** A sentence begins with a capital. */
+export function capital(text: string): string {
+  return text.charAt(0).toUpperCase() + text.slice(1)
+}
+
+export function counted(count: number, one: string, many = `${one}s`): string {
+  return `${numberWord(count)} ${count === 1 ? one : many}`
+}
+
+export function listed(items: string[]): string {
+  return items.length < 2 ? (items[0] ?? '') : `${items.slice(0, -1).join(', ')} and ${items.at(-1)}`
+}
+
+/** A value with the figures its attribute is worth, and a true minus; without its unit. */
+export function shownValue(attribute: string, value: number): string {
+  const known = attributes[attribute as AttributeKey]
+  if (!known) return String(value)
+  if ('words' in known) return known.words[Math.round(value)] ?? String(value)
+  const text = known.decimals === 'three figures' ? threeFigures(value) : value.toFixed(known.decimals)
+  return grouped(text.replace(/^-(0\.0*)$/, '$1').replace('-', '−'))
+}
+
+export function shownWithUnit(attribute: string, value: number): string {
+  const known = attributes[attribute as AttributeKey]
+  const shown = shownValue(attribute, value)
+  return known?.unit && !('words' in known) ? `${shown} ${known.unit}` : shown
+}
+
+function threeFigures(value: number): string {
+  if (value === 0) return '0'
+  const decimals = 2 - Math.floor(Math.log10(Math.abs(value)))
+  return decimals >= 0 ? value.toFixed(decimals) : String(Number(value.toPrecision(3)))
+}
+
+/** Thousands with a thin gap, from 10 000 on as in 1200 there is nothing to miscount. */
+function grouped(text: string): string {
+  const [whole = '', rest] = text.split('.')
+  const gapped = whole.length > 4 ? whole.replace(/\B(?=(\d{3})+(?!\d))/g, '\u2009') : whole
+  return rest === undefined ? gapped : `${gapped}.${rest}`
+}

@@ -1,0 +1,100 @@
+import { z } from '@/lib/http/zod'
+import { attributeKey } from '@/lib/reading/schema/attributes'
+import { entryDetail } from '@/lib/reading/schema/entry'
+
+/** What may be left out of the protocol's plan so that a batch can fill the study. */
+export const studyAdjustments = z
+  .object({
+    fillG: z.number().positive().max(5000).optional(),
+    leaveOutWeeks: z.array(z.number().positive()).max(60).optional(),
+    leaveOutRetains: z.boolean().optional(),
+  })
+  .default({})
+export type StudyAdjustments = z.output<typeof studyAdjustments>
+
+export const initialReading = z.object({
+  batchId: z.uuid(),
+  attribute: attributeKey,
+  /** One text per replicate, as typed: "5,60" stays "5,60". Viscosity in mPa·s, or torque % where `isTorque`. */
+  typed: z.array(z.string().trim().min(1, 'Type the reading.').max(60)).min(1).max(5),
+  isTorque: z.boolean().default(false),
+  detail: entryDetail.omit({ torquePercent: true }).default({}),
+  instrumentId: z.uuid().nullable().default(null),
+  /** Now if left out; never later than now. */
+  measuredAt: z.iso.datetime({ offset: true }).optional(),
+})
+export type InitialReading = z.output<typeof initialReading>
+
+export const startedStudy = z.object({
+  id: z.uuid(),
+  /** Given by the lab if left out: S-001 and so on. */
+  code: z
+    .string()
+    .trim()
+    .regex(/^[A-Za-z0-9][A-Za-z0-9-]{0,19}$/, 'A code has letters, digits and hyphens, 20 at most.')
+    .optional(),
+  title: z.string().trim().min(1, 'Give the study a title.').max(160),
+  protocolVersionId: z.uuid(),
+  batchIds: z.array(z.uuid()).min(1, 'Choose at least one batch.').max(12),
+  /** The lab's station for each of the plan's stations, by position; what is left out is chosen by its fit. */
+  stationChoices: z.array(z.object({ position: z.number().int().min(0), stationId: z.uuid() })).default([]),
+  adjustments: studyAdjustments,
+  startedAt: z.iso.datetime({ offset: true }).optional(),
+  initialReadings: z.array(initialReading).max(200),
+  clientId: z.uuid().nullable().default(null),
+  isShared: z.boolean().default(false),
+})
+export type StartStudy = z.input<typeof startedStudy>
+export type StartedStudy = z.output<typeof startedStudy>
+
+export const changedStudy = z.object({
+  version: z.number().int().positive(),
+  title: z.string().trim().min(1, 'Give the study a title.').max(160),
+  clientId: z.uuid().nullable(),
+  isShared: z.boolean(),
+})
+export type ChangedStudy = z.input<typeof changedStudy>
+
+export const endedStudy = z.object({
+  version: z.number().int().positive(),
+  reason: z.string().trim().min(1, 'Say why the study ends.').max(500),
+})
+
+export const following = z.object({ isFollowing: z.boolean() })
+
+export const studyAddress = z.object({ code: z.string().max(40) })
+
+export const studyStandings = ['out', 'leaning', 'steady', 'untold'] as const
+export type StudyStanding = (typeof studyStandings)[number]
+
+export const studySorts = ['worst', 'code', 'next'] as const
+
+/** The ledger's own address: what is typed there is what is shown. */
+export const studyFilter = z.object({
+  is: z.enum(['running', 'closed']).catch('running').default('running'),
+  q: z.string().trim().max(80).catch('').default(''),
+  standing: z
+    .enum(['any', ...studyStandings])
+    .catch('any')
+    .default('any'),
+  sort: z.enum(studySorts).catch('worst').default('worst'),
+})
+export type StudyFilter = z.output<typeof studyFilter>
+
+export const studyKeys = {
+  list: (filter: StudyFilter) =>
+    `/api/studies?${new URLSearchParams({ is: filter.is, q: filter.q, standing: filter.standing, sort: filter.sort })}`,
+  start: '/api/studies',
+  one: (code: string) => address(code),
+  sheet: (code: string) => `${address(code)}/sheet`,
+  curves: (code: string) => `${address(code)}/curves`,
+  readings: (code: string) => `${address(code)}/readings`,
+  jars: (code: string) => `${address(code)}/jars`,
+  record: (code: string) => `${address(code)}/record`,
+  end: (code: string) => `${address(code)}/end`,
+  follow: (code: string) => `${address(code)}/follow`,
+}
+
+function address(code: string): string {
+  return `/api/studies/${encodeURIComponent(code)}`
+}
