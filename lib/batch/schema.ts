@@ -113,6 +113,8 @@ export const batchListQuery = z.object({
 })
 export type BatchListQuery = z.infer<typeof batchListQuery>
 
+export const batchAddress = z.object({ code: z.string().max(60) })
+
 export const batchesKey = ({ q, state, sort, order }: BatchListQuery) =>
   `/api/batches?${new URLSearchParams({ q, state, sort, order })}`
 export const batchKey = (code: string) => `/api/batches/${encodeURIComponent(code)}`

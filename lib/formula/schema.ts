@@ -116,6 +116,12 @@ export const formulaListQuery = z.object({
 })
 export type FormulaListQuery = z.infer<typeof formulaListQuery>
 
+export const formulaAddress = z.object({ code: z.string().max(40) })
+export const formulaPageQuery = z.object({
+  /** Number of the version; the latest where there is none. */
+  version: z.coerce.number().int().positive().max(100_000).optional().catch(undefined),
+})
+
 function isOnce(rows: { id: string }[]): boolean {
   return new Set(rows.map((row) => row.id)).size === rows.length
 }

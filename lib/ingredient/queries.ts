@@ -19,3 +19,14 @@ export async function searchIngredients(db: Db, _actor: Actor, q: string) {
 }
 
 export type IngredientRow = Awaited<ReturnType<typeof searchIngredients>>[number]
+
+/** Those of the names that are among the ingredients, whatever their capitals. */
+export async function listIngredientsNamed(db: Db, _actor: Actor, names: readonly string[]) {
+  const wanted = names.map((name) => name.trim().toLowerCase())
+  if (!wanted.length) return []
+  return db
+    .selectFrom('ingredient')
+    .select(['id', 'inciName', 'function', 'density', 'isOilPhase', 'priceCentsPerKg', 'caution'])
+    .where(sql<string>`lower(inci_name)`, 'in', wanted)
+    .execute()
+}

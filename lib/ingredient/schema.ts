@@ -32,4 +32,12 @@ export type IngredientInput = z.infer<typeof ingredientInput>
 
 export const ingredientSearch = z.object({ q: z.string().max(200).default('') })
 
+/** Names of a pasted block, looked up together. */
+export const ingredientNames = z.object({
+  name: z
+    .union([z.string(), z.array(z.string())])
+    .transform((names) => (Array.isArray(names) ? names : [names]))
+    .refine((names) => names.length <= 60, 'At most 60 names are looked up at once.'),
+})
+
 export const ingredientsKey = (q: string) => `/api/ingredients?q=${encodeURIComponent(q)}`

@@ -1,4 +1,4 @@
-import { jsonArrayFrom } from 'kysely/helpers/postgres'
+import { amountsOfVersions } from '@/lib/formula/queries/amounts-of-versions'
 import type { Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
 import { formulaTotals } from '@/lib/formula/rules/totals'
@@ -6,16 +6,17 @@ import type { EmulsionType } from '@/lib/formula/schema'
 import { refuse } from '@/lib/http/errors'
 import type { BatchState, TypeFound } from '../schema'
 
-/** What a study needs to know of the batches that it starts on, in the order of the ids: one statement. */
+/** What a study needs to know of the batches that it starts on, in the order of the ids: two statements. */
 export async function listBatchesForStudy(db: Db, _actor: Actor, ids: readonly string[]) {
   if (!ids.length) return []
   const rows = await db
     .selectFrom('batch')
     .innerJoin('formulaVersion', 'formulaVersion.id', 'batch.formulaVersionId')
     .innerJoin('formula', 'formula.id', 'formulaVersion.formulaId')
-    .select((eb) => [
+    .select([
       'batch.id',
       'batch.code',
+      'batch.formulaVersionId',
       'batch.state',
       'batch.sizeG',
       'batch.yieldG',
@@ -30,19 +31,16 @@ export async function listBatchesForStudy(db: Db, _actor: Actor, ids: readonly s
       'formula.emulsionType',
       'formula.clientId',
       'formulaVersion.number as versionNumber',
-      jsonArrayFrom(
-        eb
-          .selectFrom('formulaLine')
-          .select(['percentThousandths', 'density', 'isInternal', 'priceCentsPerKg'])
-          .whereRef('formulaLine.formulaVersionId', '=', 'formulaVersion.id')
-          .orderBy('position'),
-      ).as('lines'),
     ])
     .where('batch.id', 'in', ids)
     .execute()
+  const amounts = await amountsOfVersions(
+    db,
+    rows.map((row) => row.formulaVersionId),
+  )
   return rows
-    .map(({ lines, ...row }) => {
-      const totals = formulaTotals(lines)
+    .map((row) => {
+      const totals = formulaTotals(amounts.get(row.formulaVersionId) ?? [])
       return {
         ...row,
         state: row.state as BatchState,

@@ -1,17 +1,16 @@
-import { jsonArrayFrom } from 'kysely/helpers/postgres'
 import type { Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
 import type { EmulsionType } from '../schema'
 
-/** One version of a formula (the latest unless a number is given) with what its page shows: three statements. */
+/** One version of a formula (the latest unless a number is given) with what its page shows: four statements. */
 export async function getFormula(db: Db, _actor: Actor, code: string, number?: number) {
   const versions = await db
     .selectFrom('formula')
     .innerJoin('formulaVersion', 'formulaVersion.formulaId', 'formula.id')
     .innerJoin('person', 'person.id', 'formulaVersion.createdBy')
     .leftJoin('client', 'client.id', 'formula.clientId')
-    .select((eb) => [
+    .select([
       'formula.id as formulaId',
       'formula.code',
       'formula.name',
@@ -24,13 +23,6 @@ export async function getFormula(db: Db, _actor: Actor, code: string, number?: n
       'formulaVersion.version',
       'formulaVersion.createdAt',
       'person.initials as createdBy',
-      jsonArrayFrom(
-        eb
-          .selectFrom('batch')
-          .select(['batch.code', 'batch.state', 'batch.sizeG', 'batch.yieldG', 'batch.createdAt'])
-          .whereRef('batch.formulaVersionId', '=', 'formulaVersion.id')
-          .orderBy('batch.createdAt'),
-      ).as('batches'),
     ])
     .where('formula.code', '=', code)
     .orderBy('formulaVersion.number')
@@ -44,9 +36,10 @@ export async function getFormula(db: Db, _actor: Actor, code: string, number?: n
     )
   }
   const before = versions.filter((version) => version.number < shown.number).at(-1)
-  const [lines, steps] = await Promise.all([
+  const [lines, steps, batches] = await Promise.all([
     listLines(db, before ? [shown.id, before.id] : [shown.id]),
     listSteps(db, shown.id),
+    listBatchesMade(db, shown.formulaId),
   ])
   return {
     id: shown.formulaId,
@@ -61,21 +54,21 @@ export async function getFormula(db: Db, _actor: Actor, code: string, number?: n
     version: shown.version,
     createdBy: shown.createdBy,
     createdAt: shown.createdAt,
-    batches: shown.batches,
+    batches,
     lines: lines.filter((line) => line.formulaVersionId === shown.id),
     steps,
     /** The version before, for "was". */
     before: before
       ? { number: before.number, lines: lines.filter((line) => line.formulaVersionId === before.id) }
       : null,
-    versions: versions.map(({ id, number: n, state, note, createdBy, createdAt, batches }) => ({
+    versions: versions.map(({ id, number: n, state, note, createdBy, createdAt }) => ({
       id,
       number: n,
       state,
       note,
       createdBy,
       createdAt,
-      batchCodes: batches.map((batch) => batch.code),
+      batchCodes: batches.filter((batch) => batch.versionNumber === n).map((batch) => batch.code),
     })),
   }
 }
@@ -109,5 +102,17 @@ function listSteps(db: Db, versionId: string) {
     .select(['id', 'phase', 'instruction', 'speedRpm', 'minutes', 'temperatureC', 'caution'])
     .where('formulaVersionId', '=', versionId)
     .orderBy('position')
+    .execute()
+}
+
+/** Of all versions, oldest first. */
+function listBatchesMade(db: Db, formulaId: string) {
+  return db
+    .selectFrom('batch')
+    .innerJoin('formulaVersion', 'formulaVersion.id', 'batch.formulaVersionId')
+    .select(['batch.code', 'batch.state', 'batch.sizeG', 'batch.yieldG', 'batch.createdAt'])
+    .select('formulaVersion.number as versionNumber')
+    .where('formulaVersion.formulaId', '=', formulaId)
+    .orderBy('batch.createdAt')
     .execute()
 }

@@ -3,9 +3,10 @@ import { jsonArrayFrom } from 'kysely/helpers/postgres'
 import type { Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
 import { formulaTotals } from '../rules/totals'
+import { amountsOfVersions } from './amounts-of-versions'
 import type { EmulsionType, FormulaListQuery } from '../schema'
 
-/** Each formula with its latest version: one statement, whatever the number of lines. */
+/** Each formula with its latest version: two statements, whatever the number of lines. */
 export async function listFormulas(db: Db, _actor: Actor, query: FormulaListQuery) {
   const typed = `%${query.q
     .trim()
@@ -31,15 +32,9 @@ export async function listFormulas(db: Db, _actor: Actor, query: FormulaListQuer
       'formula.name',
       'formula.emulsionType',
       'client.name as clientName',
+      'latest.versionId',
       'latest.number as versionNumber',
       'latest.state',
-      jsonArrayFrom(
-        eb
-          .selectFrom('formulaLine')
-          .select(['percentThousandths', 'density', 'isInternal', 'priceCentsPerKg'])
-          .whereRef('formulaLine.formulaVersionId', '=', 'latest.versionId')
-          .orderBy('position'),
-      ).as('lines'),
       jsonArrayFrom(
         eb
           .selectFrom('batch')
@@ -65,8 +60,12 @@ export async function listFormulas(db: Db, _actor: Actor, query: FormulaListQuer
     )
     .orderBy('formula.code')
     .execute()
-  const formulas = rows.map(({ lines, ...row }) => {
-    const totals = formulaTotals(lines)
+  const amounts = await amountsOfVersions(
+    db,
+    rows.map((row) => row.versionId),
+  )
+  const formulas = rows.map((row) => {
+    const totals = formulaTotals(amounts.get(row.versionId) ?? [])
     return {
       ...row,
       emulsionType: row.emulsionType as EmulsionType,

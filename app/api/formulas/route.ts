@@ -1,0 +1,16 @@
+import { createFormula } from '@/lib/formula/commands/create-formula'
+import { listFormulas } from '@/lib/formula/queries/list-formulas'
+import { createFormulaInput, formulaListQuery } from '@/lib/formula/schema'
+import { read, write } from '@/lib/http/route'
+
+export const GET = read({
+  permission: 'formula.read',
+  query: formulaListQuery,
+  handler: ({ db, actor, query }) => listFormulas(db, actor, query),
+})
+
+export const POST = write({
+  permission: 'formula.write',
+  input: createFormulaInput,
+  handler: ({ db, actor, input }) => createFormula(db, actor, input),
+})

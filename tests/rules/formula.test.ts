@@ -1,0 +1,165 @@
+import { describe, expect, it } from 'vitest'
+import fc from 'fast-check'
+import { formulaChecks } from '@/lib/formula/rules/checks'
+import { formulaFinding } from '@/lib/formula/rules/finding'
+import { grouped, percentText, readDecimal, readScaled } from '@/lib/formula/rules/numbers'
+import { readPastedLines } from '@/lib/formula/rules/paste'
+import { formulaTotals, phaseTotals, remainderThousandths } from '@/lib/formula/rules/totals'
+
+describe('numbers as people type them', () => {
+  it('reads decimal comma and point, spaces and thin gaps; guesses at nothing', () => {
+    expect(['0,25', '0.25', ' 1 568,5', '1\u2009568.5', '12.', '.5'].map(readDecimal)).toEqual([
+      0.25, 0.25, 1568.5, 1568.5, 12, 0.5,
+    ])
+    expect(['', 'abc', '1,000.5', '1.2.3', '5 g', 'Infinity', '0x10', '1e3'].map(readDecimal)).toEqual(
+      Array.from({ length: 8 }, () => null),
+    )
+  })
+
+  it('keeps a share exact in thousandths and refuses a fourth decimal', () => {
+    expect(readScaled('2,405', 3)).toBe(2405)
+    expect(readScaled('0.1230', 3)).toBe(123)
+    expect(readScaled('0.1234', 3)).toBeNull()
+    fc.assert(fc.property(fc.integer({ min: 0, max: 100_000 }), (n) => readScaled(percentText(n), 3) === n))
+  })
+
+  it('groups thousands with a thin gap', () => {
+    expect(grouped(1568, 1)).toBe('1\u2009568.0')
+    expect(grouped(-0.13, 2)).toBe('\u22120.13')
+  })
+})
+
+const line = (
+  percent: number,
+  density: number,
+  isInternal: boolean,
+  priceCentsPerKg: number | null = null,
+) => ({
+  percentThousandths: Math.round(percent * 1000),
+  density,
+  isInternal,
+  priceCentsPerKg,
+})
+
+describe('totals', () => {
+  it('add up exactly where floating point would not', () => {
+    const totals = formulaTotals(Array.from({ length: 10 }, () => line(10, 1, false)))
+    expect(totals.totalThousandths).toBe(100_000)
+    // 0.1 + 0.2 in floating point is 0.30000000000000004
+    expect(formulaTotals([line(0.1, 1, true), line(0.2, 1, true)]).missingThousandths).toBe(99_700)
+  })
+
+  it('cost is the weighted price, and lines without one are counted', () => {
+    const totals = formulaTotals([line(10, 1, false, 1850), line(80, 1, true, 2), line(10, 1, true)])
+    // 0.1 kg at 18.50 and 0.8 kg at 0.02
+    expect(totals.costCentsPerKg).toBe(187)
+    expect(totals.linesWithoutPrice).toBe(1)
+    expect(formulaTotals([]).costCentsPerKg).toBeNull()
+  })
+
+  it('a phase has its share by volume', () => {
+    const phases = phaseTotals([
+      { ...line(20, 0.8, false), phase: 'A' },
+      { ...line(80, 1, true), phase: 'B' },
+    ])
+    expect(phases.map((phase) => phase.phase)).toEqual(['A', 'B'])
+    expect(phases[0]?.volumePercent).toBeCloseTo(100 * (25 / 105), 6)
+  })
+
+  it('the remainder makes up 100 % and is never below 0', () => {
+    expect(remainderThousandths([line(14, 1, false), line(0.35, 1, true)])).toBe(85_650)
+    expect(remainderThousandths([line(100, 1, false), line(5, 1, true)])).toBe(0)
+  })
+})
+
+describe('a pasted block', () => {
+  it('reads tabs with decimal commas, a heading row, phases and prices', () => {
+    const text =
+      'Phase\tINCI\tFunction\t%\nA\tSqualane\tlight oil\t12,40\t0,810\t21,00\nB\tAqua\twater\tq.s.\t0,998\n'
+    expect(readPastedLines(text)).toMatchObject([
+      {
+        phase: 'A',
+        inciName: 'Squalane',
+        function: 'light oil',
+        percent: '12,40',
+        density: '0,810',
+        price: '21,00',
+      },
+      { phase: 'B', inciName: 'Aqua', function: 'water' },
+    ])
+  })
+
+  it('reads commas, quoted names and a name that holds a comma', () => {
+    expect(readPastedLines('1,2-Hexanediol,humectant,2.0\n"Oil, refined",oil,5 %')).toMatchObject([
+      { inciName: '1,2-Hexanediol', function: 'humectant', percent: '2.0' },
+      { inciName: 'Oil, refined', function: 'oil', percent: '5' },
+    ])
+  })
+
+  it('is no block when it is one cell or holds no shares', () => {
+    expect(readPastedLines('Squalane')).toBeNull()
+    expect(readPastedLines('Squalane\toil')).toBeNull()
+    expect(readPastedLines('')).toBeNull()
+  })
+})
+
+const named = (inciName: string, fn: string, percent: number, isInternal: boolean) => ({
+  ...{ inciName, function: fn, percentThousandths: percent * 1000, isInternal },
+})
+const step = (phase: string, more: object = {}) => ({
+  ...{ phase, instruction: 'Stir', speedRpm: null, minutes: null, temperatureC: null },
+  ...more,
+})
+
+describe('questions to a formula', () => {
+  const lines = [
+    named('PEG-30 Dipolyhydroxystearate', 'polymeric emulsifier', 2.4, false),
+    named('Magnesium Sulfate', 'electrolyte', 1, true),
+    named('Xanthan Gum', 'gels the water', 0.25, true),
+  ]
+  const keys = (checks: ReturnType<typeof formulaChecks>, isOpen: boolean) =>
+    checks.filter((check) => check.isOpen === isOpen).map((check) => check.key)
+
+  it('are answered from its own lines and steps', () => {
+    const joined = [step('A'), step('B into A', { speedRpm: 300, minutes: 44, temperatureC: 28 })]
+    const checks = formulaChecks('water-in-oil', lines, joined)
+    expect(keys(checks, true)).toEqual([])
+    expect(checks.find((check) => check.key === 'slow')?.answer).toBe('Yes, over 44 min in step 2.')
+    expect(checks.every((check) => check.reason.length > 10)).toBe(true)
+  })
+
+  it('stay open where the formula does not say, is fast or is warm', () => {
+    expect(keys(formulaChecks('water-in-oil', [], []), true)).toEqual([
+      ...['polymer', 'salt', 'gel', 'slow', 'shear', 'cold'],
+    ])
+    const rough = [
+      step('B into A', { minutes: 20, speedRpm: 300, temperatureC: 60 }),
+      step('', { speedRpm: 8000 }),
+    ]
+    expect(keys(formulaChecks('water-in-silicone', lines, rough), true)).toEqual(['shear', 'cold'])
+  })
+
+  it('ask about salt with an acrylic thickener, in either type of emulsion', () => {
+    const clash = [...lines, named('Carbomer', 'gels the water', 0.3, true)]
+    expect(keys(formulaChecks('water-in-oil', clash, []), true)).toContain('agree')
+    const outside = clash.map((row) => ({ ...row, isInternal: !row.isInternal }))
+    expect(keys(formulaChecks('oil-in-water', outside, []), true)).toEqual(['agree', 'shear'])
+  })
+})
+
+describe('the finding', () => {
+  it('says how much is inside, what is missing, and where packing ends', () => {
+    const totals = formulaTotals([line(13, 0.9, false), line(86, 1, true)])
+    const finding = formulaFinding('water-in-oil', totals, [])
+    expect(`${finding.strong}${finding.rest}`).toBe('85.6 % water inside, past the closest packing')
+    expect(finding.sentence).toContain('total 99.00 %, 1.00 % missing')
+    const lotion = formulaFinding(
+      'oil-in-water',
+      formulaTotals([line(20, 0.9, true), line(85, 1, false)]),
+      [],
+    )
+    expect(lotion.rest).toContain('oil inside')
+    expect(lotion.sentence).toContain('5.00 % too much')
+    expect(formulaFinding('water-in-oil', formulaTotals([]), []).strong).toBe('Nothing')
+  })
+})
