@@ -1,11 +1,9 @@
 import { hash, verify } from '@node-rs/argon2'
+import { longestPassword, shortestPassword } from '@/lib/person/rules'
 import { commonPasswords } from './common-passwords'
 
 // OWASP's first choice for argon2id: 19 MiB, two passes, one lane.
 const cost = { memoryCost: 19_456, timeCost: 2, parallelism: 1 }
-
-export const shortestPassword = 12
-export const longestPassword = 128
 
 export function hashPassword(password: string): Promise<string> {
   return hash(password.normalize('NFKC'), cost)

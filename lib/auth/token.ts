@@ -1,0 +1,67 @@
+import { createHash, randomBytes } from 'node:crypto'
+import { sql } from 'kysely'
+import type { Db, Trx } from '@/lib/db/client'
+import { newId } from '@/lib/db/id'
+
+export type TokenKind = 'invitation' | 'reset' | 'setup'
+
+const hours: Record<TokenKind, number> = { invitation: 7 * 24, reset: 1, setup: 7 * 24 }
+
+/** The secret leaves through the caller alone; the database keeps its hash. Earlier ones of its kind end. */
+export async function createToken(trx: Trx, kind: TokenKind, personId: string | null): Promise<string> {
+  const secret = randomBytes(24).toString('base64url')
+  await trx
+    .deleteFrom('token')
+    .where('kind', '=', kind)
+    .where('personId', 'is not distinct from', personId)
+    .where('usedAt', 'is', null)
+    .execute()
+  await trx
+    .insertInto('token')
+    .values({
+      id: newId(),
+      kind,
+      personId,
+      hash: hashOf(secret),
+      expiresAt: sql<string>`app_now() + make_interval(hours => ${hours[kind]})`,
+    })
+    .execute()
+  return secret
+}
+
+/** Valid once. Null where it is unknown, used, or too old. */
+export async function spendToken(
+  trx: Trx,
+  kind: TokenKind,
+  secret: string,
+): Promise<{ personId: string | null } | null> {
+  const spent = await trx
+    .updateTable('token')
+    .set({ usedAt: sql<string>`app_now()` })
+    .where('kind', '=', kind)
+    .where('hash', '=', hashOf(secret))
+    .where('usedAt', 'is', null)
+    .where('expiresAt', '>', sql<string>`app_now()`)
+    .returning('personId')
+    .executeTakeFirst()
+  return spent ?? null
+}
+
+/** Whose link this is, for the page that greets; it spends nothing. */
+export async function findTokenPerson(db: Db, kind: TokenKind, secret: string) {
+  const person = await db
+    .selectFrom('token')
+    .innerJoin('person', 'person.id', 'token.personId')
+    .select(['person.name', 'person.email'])
+    .where('token.kind', '=', kind)
+    .where('token.hash', '=', hashOf(secret))
+    .where('token.usedAt', 'is', null)
+    .where('token.expiresAt', '>', sql<string>`app_now()`)
+    .where('person.isActive', '=', true)
+    .executeTakeFirst()
+  return person ?? null
+}
+
+function hashOf(secret: string): string {
+  return createHash('sha256').update(secret.trim()).digest('hex')
+}
