@@ -27,5 +27,5 @@ export function bufferPh({ buffer, temperatureC }: { buffer: Buffer; temperature
   const table = bufferTables[buffer]
   const index = Math.min(Math.floor(temperatureC / stepC), table.length - 2)
   const share = temperatureC / stepC - index
-  return { ph: table[index]! + share * (table[index + 1]! - table[index]!) }
+  return { ph: (1 - share) * table[index]! + share * table[index + 1]! }
 }

@@ -89,7 +89,10 @@ export type SeriesPoint = {
   wantsThirdJar: boolean
   /** The series' standing as it was judged on this day, from this and the earlier points. */
   standing: Standing
+  /** All readings of the day, repeats and doubted ones too. */
   readingIds: string[]
+  /** Those the mean is made of; none where the point does not count. */
+  countedIds: string[]
 }
 
 /** The least-squares line with what its confidence band needs. */

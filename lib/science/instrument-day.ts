@@ -1,0 +1,106 @@
+import { assertComputable, assertFinite, assertNumbers, assertPositive, assertSameLength } from './guard'
+import { mean, median } from './mean'
+import { fitLine, predictLine } from './regression'
+
+export type InstrumentDayStation = { name: string; temperatureC: number; times: number[]; values: number[] }
+
+export type InstrumentDayInput = {
+  /** Series of one attribute read on one instrument; several batches at one station are several entries. */
+  stations: InstrumentDayStation[]
+  /** The day in question, on the same scale as `times`. */
+  at: number
+  repeatabilitySd: number
+  /** Viscosity builds everywhere within 14 days of making: then a shift is only a note. */
+  daysSinceMaking?: number
+}
+
+export type InstrumentDay = {
+  shift: boolean
+  level: 'doubt' | 'note' | null
+  direction: 'high' | 'low' | null
+  /** Median residual in repeatability SDs; null where fewer than three stations can be judged. */
+  median: number | null
+  evidence: {
+    residuals: { name: string; temperatureC: number; residual: number }[]
+    beyondOne: number
+    coldestMean: number | null
+  }
+}
+
+const leastStations = 3
+const leastForLine = 6
+const rule = { median: 2.25, each: 1, coldest: 1.75, buildingDays: 14 } as const
+
+/**
+ * Whether one instrument read high or low everywhere on one day: residuals from each station's own earlier line
+ * (mean of its latest two while under six times), in s, counted in the direction of their median: median above 2.25
+ * over at least three stations, at least three above 1, mean of the two coldest above 1.75. The cold stations keep a
+ * real change of the hot ones from being taken for the instrument's.
+ */
+export function instrumentDay(input: InstrumentDayInput): InstrumentDay {
+  assertFinite('at', input.at)
+  assertPositive('repeatabilitySd', input.repeatabilitySd)
+  const residuals = input.stations.flatMap((station, i) => {
+    const residual = residualAt(station, input.at, `stations[${i}]`)
+    return residual === null
+      ? []
+      : [
+          {
+            name: station.name,
+            temperatureC: station.temperatureC,
+            residual: residual / input.repeatabilitySd,
+          },
+        ]
+  })
+  if (residuals.length < leastStations) {
+    return {
+      shift: false,
+      level: null,
+      direction: null,
+      median: null,
+      evidence: assertComputable('stations', { residuals, beyondOne: 0, coldestMean: null }),
+    }
+  }
+  const middle = median(residuals.map((r) => r.residual))
+  const sign = middle < 0 ? -1 : 1
+  const beyondOne = residuals.filter((r) => sign * r.residual > rule.each).length
+  const coldestMean = mean(
+    [...residuals]
+      .sort((a, b) => a.temperatureC - b.temperatureC)
+      .slice(0, 2)
+      .map((r) => r.residual),
+  )
+  const shift = sign * middle > rule.median && beyondOne >= leastStations && sign * coldestMean > rule.coldest
+  const isBuilding = input.daysSinceMaking !== undefined && input.daysSinceMaking <= rule.buildingDays
+  return assertComputable('stations', {
+    shift,
+    level: shift ? (isBuilding ? 'note' : 'doubt') : null,
+    direction: shift ? (sign > 0 ? 'high' : 'low') : null,
+    median: middle,
+    evidence: { residuals, beyondOne, coldestMean },
+  })
+}
+
+/** Distance of the day's mean from where the station's earlier readings lead; null where either is missing. */
+function residualAt(station: InstrumentDayStation, at: number, field: string): number | null {
+  assertFinite(`${field}.temperatureC`, station.temperatureC)
+  assertNumbers(`${field}.times`, station.times, 0)
+  assertNumbers(`${field}.values`, station.values, 0)
+  assertSameLength(`${field}.times`, station.times, `${field}.values`, station.values)
+  const pairs = station.times.map((time, i) => ({ time, value: station.values[i]! }))
+  const today = pairs.filter((pair) => pair.time === at)
+  const earlier = pairs.filter((pair) => pair.time < at).sort((a, b) => a.time - b.time)
+  if (today.length === 0 || earlier.length === 0) return null
+  const value = mean(today.map((pair) => pair.value))
+  return value - expectedAt(earlier, at)
+}
+
+function expectedAt(earlier: readonly { time: number; value: number }[], at: number): number {
+  const times = new Set(earlier.map((pair) => pair.time))
+  if (times.size < leastForLine) return mean(earlier.slice(-2).map((pair) => pair.value))
+  const fit = fitLine(
+    earlier.map((pair) => pair.time),
+    earlier.map((pair) => pair.value),
+  )
+  return predictLine(fit, at).mean
+}

@@ -1,0 +1,112 @@
+import { bandUsed } from './band'
+import type { Band, ColdestStation, Evidence } from './series'
+import { fitTrend, trendAt, type TrendFit, type TrendPoint } from './trend'
+
+export type LeanInput = {
+  /** Counted points in time order, the initial first. */
+  points: readonly (TrendPoint & { day: string | null; isInitial: boolean })[]
+  band: Band
+  initial: number
+  initialTime: number
+  endTime: number
+  repeatabilitySd: number
+  coldest?: ColdestStation | undefined
+}
+
+export type Lean = { trend: TrendFit; evidence: Evidence }
+
+const leastTimes = 5
+const leastSharedDays = 4
+/** Half a day in weeks: pulls of one day at two stations. */
+const sameDay = 0.5 / 7
+
+/**
+ * Whether a series leans: a significant slope over at least five times whose fitted value has used half of the band
+ * now and will have used 0.8 of it when the study ends, on the same side; where both sides are limited, also seen
+ * against the coldest other station, which shares instrument and day but not the heat. Without another station
+ * that comparison falls away.
+ */
+export function leanOf(input: LeanInput): Lean | null {
+  const { points, band, initial, endTime, repeatabilitySd, coldest } = input
+  const own = trendUsesBand(points, band, initial, endTime, repeatabilitySd)
+  if (own === null) return null
+  const isTwoSided = band.lower !== null && band.upper !== null
+  const versus = isTwoSided && coldest !== undefined ? againstColdest(input, coldest, own.trend) : null
+  if (isTwoSided && coldest !== undefined && versus === null) return null
+  return {
+    trend: own.trend,
+    evidence: {
+      times: own.trend.n,
+      slope: own.trend.slope,
+      slopeP: own.trend.slopeP,
+      alpha: own.alpha,
+      usedNow: own.usedNow,
+      usedAtEnd: own.usedAtEnd,
+      endTime,
+      comparedWith: versus,
+    },
+  }
+}
+
+type BandUse = { trend: TrendFit; alpha: number; usedNow: number; usedAtEnd: number }
+
+/** The part of the rule that a station's own readings decide. */
+function trendUsesBand(
+  points: readonly TrendPoint[],
+  band: Band,
+  initial: number,
+  endTime: number,
+  repeatabilitySd: number,
+): BandUse | null {
+  if (points.length < leastTimes) return null
+  const trend = fitTrend(points, repeatabilitySd)
+  if (trend === null || trend.slope === 0) return null
+  const isOneSided = band.lower === null || band.upper === null
+  const alpha = isOneSided ? 0.1 : points.length >= 11 ? 0.02 : 0.005
+  if (trend.slopeP >= alpha) return null
+
+  const latest = points[points.length - 1]!.time
+  const now = trendAt(trend, latest)
+  const end = trendAt(trend, Math.max(endTime, latest))
+  const usedNow = bandUsed(band, initial, now)
+  const usedAtEnd = bandUsed(band, initial, end)
+  if (usedNow === null || usedAtEnd === null) return null
+  const isSameSide = Math.sign(now - initial) === Math.sign(end - initial)
+  if (!isSameSide || usedNow < (endTime > 26 ? 0.55 : 0.5) || usedAtEnd < 0.8) return null
+  return { trend, alpha, usedNow, usedAtEnd }
+}
+
+/** How the comparison with the coldest other station confirms the trend, or null. */
+function againstColdest(input: LeanInput, coldest: ColdestStation, trend: TrendFit): string | null {
+  const { points, band, initial, initialTime, endTime, repeatabilitySd } = input
+  const latest = points[points.length - 1]!.time + sameDay
+  const cold = coldest.times
+    .map((time, i) => ({ time, mean: coldest.values[i]!, day: coldest.days?.[i] ?? null }))
+    .filter((c) => c.time <= latest)
+  const differences: TrendPoint[] = []
+  for (const point of points) {
+    if (point.isInitial) continue
+    const match = cold.find((c) =>
+      c.day !== null && point.day !== null ? c.day === point.day : Math.abs(c.time - point.time) < sameDay,
+    )
+    if (match) differences.push({ ...point, mean: point.mean - match.mean })
+  }
+  if (differences.length >= leastSharedDays) {
+    const fit = fitTrend(differences, repeatabilitySd, Math.SQRT2)
+    if (fit && Math.sign(fit.slope) === Math.sign(trend.slope) && fit.slopeP < 0.05) return 'difference'
+  }
+  const replicates = points[points.length - 1]!.replicates
+  const alone = trendUsesBand(
+    [
+      { time: initialTime, mean: initial, replicates: points[0]!.replicates },
+      ...cold.map((c) => ({ ...c, replicates })),
+    ],
+    band,
+    initial,
+    endTime,
+    repeatabilitySd,
+  )
+  return alone && Math.sign(alone.trend.slope) === Math.sign(trend.slope)
+    ? 'same trend at the coldest station'
+    : null
+}
