@@ -5,7 +5,7 @@ import { refuse } from '@/lib/http/errors'
 import { computeFor } from '@/lib/shelf-case/queries/read'
 import { assertProposal, assertState } from '@/lib/shelf-case/rules/refusals'
 import type { CaseProposal, CaseState, EditedCase, NewCase } from '@/lib/shelf-case/schema'
-import { whoChanged } from '@/lib/trail/queries'
+import { expectOne } from '@/lib/trail/queries'
 
 /** Begins a case on a study. Proposing more than the evidence supports is refused here already. */
 export async function draftCase(trx: Trx, actor: Actor, input: NewCase) {
@@ -58,12 +58,11 @@ export async function assertVersion(
   found: { id: string; code: string; version: number },
   version: number,
 ): Promise<void> {
-  if (found.version === version) return
-  const change = await whoChanged(trx, 'shelf_case', found.id)
-  throw refuse.stale(
-    `Case ${found.code} was changed by ${change?.name ?? 'someone'} while you had it open. Reload it, then decide again.`,
-    change,
-  )
+  await expectOne(trx, found.version === version ? found : undefined, {
+    table: 'shelf_case',
+    id: found.id,
+    thing: `case ${found.code}`,
+  })
 }
 
 async function nextCode(trx: Trx): Promise<string> {

@@ -19,14 +19,11 @@ export async function signCase(trx: Trx, actor: Actor, code: string, input: Case
   const found = await findForUpdate(trx, code)
   try {
     assertState(code, found.state, 'put forward', 'signed')
-    assertMaySign(
-      { id: actor.personId, name: actor.name },
-      {
-        putForwardById: found.putForwardBy,
-        createdById: found.createdBy,
-        readingAuthors: await readingAuthors(trx, found.studyId),
-      },
-    )
+    assertMaySign(actor.personId, {
+      putForwardById: found.putForwardBy,
+      createdById: found.createdBy,
+      readingAuthors: await readingAuthors(trx, found.studyId),
+    })
     await assertVersion(trx, found, input.version)
     if (input.contentSha256 !== found.contentSha256)
       throw refuse.stale(`The content of case ${code} is not the one you saw. Reload it, read it, then sign.`)

@@ -1,6 +1,6 @@
 import { createHash } from 'node:crypto'
 import type { Db, Trx } from '@/lib/db/client'
-import type { Actor } from '@/lib/auth/actor'
+import { isClientOnly, type Actor } from '@/lib/auth/actor'
 import { refuse } from '@/lib/http/errors'
 import { caseStation, computeCase } from '@/lib/shelf-case/rules/build'
 import type { CaseContent } from '@/lib/shelf-case/rules/content'
@@ -45,7 +45,7 @@ export async function listCases(db: Db | Trx, actor: Actor) {
     )
     .orderBy('c.code', 'desc')
     .limit(500)
-  if (isOnlyClient(actor))
+  if (isClientOnly(actor))
     query = query
       .where('c.state', 'in', ['signed', 'superseded'])
       .where('s.isShared', '=', true)
@@ -74,7 +74,7 @@ export async function getCase(db: Db | Trx, actor: Actor, code: string) {
       'c.createdBy as createdById',
     ])
     .where('c.code', '=', code)
-  if (isOnlyClient(actor))
+  if (isClientOnly(actor))
     query = query
       .where('c.state', 'in', ['signed', 'superseded'])
       .where('s.isShared', '=', true)
@@ -146,6 +146,15 @@ export async function computeFor(db: Db | Trx, actor: Actor, studyId: string, st
   }
 }
 
+/** The study that a case is begun on. */
+export async function findStudyForCase(db: Db | Trx, code: string) {
+  return db
+    .selectFrom('study')
+    .select(['id', 'code', 'title', 'startedOn'])
+    .where('code', '=', code)
+    .executeTakeFirst()
+}
+
 /** Who logged, corrected or voided a reading of the study: none of them may sign it. */
 export async function readingAuthors(db: Db | Trx, studyId: string): Promise<string[]> {
   const rows = await db
@@ -155,8 +164,4 @@ export async function readingAuthors(db: Db | Trx, studyId: string): Promise<str
     .where('studyId', '=', studyId)
     .execute()
   return rows.map((r) => r.recordedBy)
-}
-
-function isOnlyClient(actor: Actor): boolean {
-  return actor.roles.every((role) => role === 'client')
 }

@@ -44,13 +44,18 @@ const nextAct: Record<CaseState, string> = {
   superseded: 'Look at the case that superseded it.',
 }
 
-/** Nobody signs own work: separation goes by what the person did, whatever the roles. */
-export function assertMaySign(
-  person: { id: string; name: string },
-  did: { putForwardById: string | null; createdById: string; readingAuthors: string[] },
-): void {
-  if (did.putForwardById === person.id || did.createdById === person.id)
-    throw refuse.conflict('You put this case forward, so someone else signs it.')
-  if (did.readingAuthors.includes(person.id))
-    throw refuse.conflict('You logged or voided a reading in this study, so someone else signs it.')
+type Did = { putForwardById: string | null; createdById: string; readingAuthors: string[] }
+
+/** Nobody signs own work: separation goes by what the person did, whatever the roles. Null where nothing bars. */
+export function whyNotSign(personId: string, did: Did): string | null {
+  if (did.putForwardById === personId || did.createdById === personId)
+    return 'You put this case forward, so someone else signs it.'
+  if (did.readingAuthors.includes(personId))
+    return 'You logged or voided a reading in this study, so someone else signs it.'
+  return null
+}
+
+export function assertMaySign(personId: string, did: Did): void {
+  const why = whyNotSign(personId, did)
+  if (why) throw refuse.conflict(why)
 }

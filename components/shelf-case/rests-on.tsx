@@ -1,0 +1,88 @@
+import type { ReactNode } from 'react'
+import { Section } from '@/components/ui/section'
+import { dayText } from '@/lib/report/rules'
+import type { CaseDetail } from '@/lib/shelf-case/queries/read'
+import type { Computed } from '@/lib/shelf-case/rules/build'
+
+type Props = { content: Computed; whyFewer: string; months: number; kind: string; detail: CaseDetail }
+
+/** The evidence behind the months, one line each. */
+export function RestsOn({ content, whyFewer, months, kind, detail }: Props) {
+  const counted = content.readings.filter((r) => r.state === 'counts').length
+  const record = content.temperatureRecord
+  const accelerated = content.shelves.filter((s) => !s.isFreezeThaw && (s.temperatureC ?? 0) >= 38)
+  const hottest = Math.max(...accelerated.map((s) => s.temperatureC ?? 0))
+  const cycles = content.shelves.filter((s) => s.isFreezeThaw)
+  const rows: [string, ReactNode][] = [
+    [
+      'Readings',
+      <>
+        <b>{counted}</b> of {content.readings.length} count
+      </>,
+    ],
+    ['Batches', content.batches.map((b) => `${b.code} (${b.formula})`).join('; ')],
+    ...(accelerated.length > 0
+      ? ([
+          [
+            `${hottest} °C`,
+            `at most ${worst(accelerated).toFixed(1)} % came apart in ${Math.floor(span(accelerated))} months`,
+          ],
+        ] as [string, ReactNode][])
+      : []),
+    ...(cycles.length > 0
+      ? ([['Freeze-thaw', `at most ${worst(cycles).toFixed(1)} % came apart`]] as [string, ReactNode][])
+      : []),
+    [
+      content.station.name,
+      record
+        ? `mean kinetic ${record.calc.output.mktC.toFixed(1)} °C, ${record.excursions.length === 0 ? 'never outside its limits' : `${record.excursions.length} excursions`}`
+        : 'no temperatures on record',
+    ],
+    ...(content.cap
+      ? ([
+          [
+            'Cap',
+            `${content.cap.output.rule}: ${Math.floor(content.cap.output.capMonths)} months. ${content.cap.why}`,
+          ],
+        ] as [string, ReactNode][])
+      : []),
+    ...(kind === 'provisional'
+      ? ([
+          ['The lab’s rule', detail.provisionalRule],
+          ['Reviewed on', detail.reviewOn ? dayText(detail.reviewOn) : ''],
+        ] as [string, ReactNode][])
+      : []),
+    ...(whyFewer
+      ? ([[`Why ${months}, not ${content.supportedMonths}`, `“${whyFewer}”`]] as [string, ReactNode][])
+      : []),
+    ...(detail.periodAfterOpeningMonths
+      ? ([
+          [
+            'After opening',
+            `${detail.periodAfterOpeningMonths} months: ${detail.periodAfterOpeningEvidence}`,
+          ],
+        ] as [string, ReactNode][])
+      : []),
+  ]
+  return (
+    <Section title="What it rests on">
+      <dl className="-mt-3">
+        {rows.map(([name, text]) => (
+          <div key={name} className="grid grid-cols-[130px_1fr] gap-3 border-b border-hair py-2">
+            <dt className="text-soft">{name}</dt>
+            <dd className="min-w-0 break-words">{text}</dd>
+          </div>
+        ))}
+      </dl>
+      <p className="mt-3 text-13 text-soft">
+        Accelerated results support, they never prove a shelf life. Safety, preservation and microbiology rest
+        with qualified laboratories and the responsible assessor under local law.
+      </p>
+    </Section>
+  )
+}
+
+const worst = (shelves: Computed['shelves']) =>
+  Math.max(0, ...shelves.flatMap((s) => s.jars.map((j) => j.percent)))
+const span = (shelves: Computed['shelves']) =>
+  Math.max(0, ...shelves.flatMap((s) => s.jars.map((j) => j.months)))
