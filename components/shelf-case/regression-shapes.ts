@@ -112,8 +112,9 @@ export function regressionShapes(input: RegressionPlotInput): Shape[] {
         x(p.t),
         clamp(y(p.y), frame.top, input.height - frame.bottom),
       ])
-    const seen = batch.line.filter((p) => p.t <= dataEnd)
-    const ahead = batch.line.filter((p) => p.t >= dataEnd && p.t <= tMax)
+    const turn = lineAt(batch.line, dataEnd)
+    const seen = [...batch.line.filter((p) => p.t < dataEnd), turn]
+    const ahead = [turn, ...batch.line.filter((p) => p.t > dataEnd && p.t <= tMax)]
     const width = isDeciding ? 2.5 : 1
     if (seen.length > 1) shapes.push({ kind: 'path', steps: trace(seen), stroke: 'ink', width })
     if (isDeciding && ahead.length > 1)
@@ -175,6 +176,14 @@ function word(x: number, y: number, text: string, anchor: 'start' | 'middle' | '
     Shape,
     { kind: 'text' }
   >
+}
+
+/** Between two samples the line is straight enough to the eye. */
+function lineAt(line: { t: number; y: number }[], t: number): { t: number; y: number } {
+  const next = line.findIndex((p) => p.t >= t)
+  const [a, b] = [line[Math.max(0, next - 1)], line[next === -1 ? line.length - 1 : next]]
+  if (!a || !b || b.t === a.t) return { t, y: (b ?? a)?.y ?? 0 }
+  return { t, y: a.y + ((t - a.t) / (b.t - a.t)) * (b.y - a.y) }
 }
 
 function clamp(v: number, min: number, max: number): number {

@@ -8,6 +8,11 @@ export function instantText(iso: string, zone: string): string {
   return format(new TZDate(iso, zone), 'd MMM yyyy, HH:mm:ss xxx')
 }
 
+/** 2 Mar 2026, 16:42 in the lab's zone. */
+export function minuteText(iso: string, zone: string): string {
+  return format(new TZDate(iso, zone), 'd MMM yyyy, HH:mm')
+}
+
 export function dayText(iso: string): string {
   return format(new Date(`${iso.slice(0, 10)}T12:00:00`), 'd MMM yyyy')
 }

@@ -1,14 +1,8 @@
-import { Svg, Text, View } from '@react-pdf/renderer'
-import { PdfDrawn } from '@/components/marks/pdf-drawn'
-import { moveShapes } from '@/components/marks/place'
-import { regressionKeyShapes, regressionShapes } from '@/components/shelf-case/regression-shapes'
+import { Text, View } from '@react-pdf/renderer'
+import { Curve, firstCurve } from '@/lib/report/document/curve'
 import { style } from '@/lib/report/document/page-frame'
-import { text } from '@/lib/report/document/fonts'
-import { dayText, figure, grouped } from '@/lib/report/rules'
-import type { AttributeEvidence, CaseContent } from '@/lib/shelf-case/rules/content'
-import { regressionView } from '@/lib/shelf-case/rules/plot'
-
-const sheetWidth = 511
+import { dayText } from '@/lib/report/rules'
+import type { CaseContent } from '@/lib/shelf-case/rules/content'
 
 /** The statistics of every attribute with its curve, the temperature record, and what weakens the case. */
 export function EvidencePages({ content }: { content: CaseContent }) {
@@ -25,9 +19,11 @@ export function EvidencePages({ content }: { content: CaseContent }) {
           : ''}
       </Text>
       <StatisticsTable content={content} />
-      {curves.map((a) => (
-        <Curve key={a.attribute} a={a} content={content} />
-      ))}
+      {curves
+        .filter((a) => a !== firstCurve(content))
+        .map((a) => (
+          <Curve key={a.attribute} a={a} content={content} />
+        ))}
       <Text style={style.h2}>Temperature of {content.station.name}</Text>
       <Text>{temperatureText(content)}</Text>
       <Text style={style.h2}>What weakens it</Text>
@@ -89,67 +85,6 @@ function StatisticsTable({ content }: { content: CaseContent }) {
           </View>
         )
       })}
-    </View>
-  )
-}
-
-function Curve({ a, content }: { a: AttributeEvidence; content: CaseContent }) {
-  const view = regressionView(a, 60)
-  if (!view || !a.calc) return null
-  const isPercent = view.unit.startsWith('%')
-  const size = { width: 700, height: 250 }
-  const shapes = regressionShapes({
-    ...size,
-    batches: view.batches,
-    lower: view.lower,
-    upper: view.upper,
-    limitText: {
-      ...(view.lower === null ? {} : { lower: `allowed down to ${label(view.lower)}` }),
-      ...(view.upper === null ? {} : { upper: `allowed up to ${label(view.upper)}` }),
-    },
-    dataMonths: content.dataMonths,
-    proposedMonths: content.proposal.months,
-    crossingMonths: a.crossingMonths,
-    crossingSide: a.calc.output.batches.find((b) => b.crossing === a.crossingMonths)?.side ?? null,
-    decides: a.decidedBy,
-    format: label,
-  })
-  function label(y: number): string {
-    return isPercent
-      ? y.toFixed(0)
-      : a.attribute === 'viscosity'
-        ? grouped(y.toPrecision(3))
-        : figure(a.attribute, y)
-  }
-  const scale = sheetWidth / size.width
-  return (
-    <View wrap={false} style={{ marginTop: 10 }}>
-      <Text style={style.h2}>
-        {a.label} <Text style={{ fontWeight: 400, fontSize: 8.5 }}>{view.unit}, by month</Text>
-      </Text>
-      <Svg
-        width={sheetWidth}
-        height={(size.height + 20) * scale}
-        viewBox={`0 0 ${size.width} ${size.height + 20}`}
-      >
-        <PdfDrawn
-          fontFamily={text as unknown as string}
-          shapes={[
-            ...moveShapes(
-              regressionKeyShapes(
-                view.batches.map((b) => b.name),
-                420,
-              ),
-              52,
-              0,
-            ),
-            ...moveShapes(shapes, 0, 20),
-          ]}
-        />
-      </Svg>
-      <Text style={style.soft}>
-        Fitted: {a.scale}. Dashed: carried on by the line. Dotted: its confidence bound.
-      </Text>
     </View>
   )
 }

@@ -3,6 +3,7 @@ import { bandBarShapes } from '@/components/marks/band-bar-shapes'
 import { hashCombShapes } from '@/components/marks/hash-comb-shapes'
 import { PdfDrawn } from '@/components/marks/pdf-drawn'
 import { moveShapes } from '@/components/marks/place'
+import { Curve, firstCurve } from '@/lib/report/document/curve'
 import { mono } from '@/lib/report/document/fonts'
 import { style } from '@/lib/report/document/page-frame'
 import { Shelves } from '@/lib/report/document/shelves'
@@ -13,6 +14,7 @@ import type { AttributeEvidence, CaseContent } from '@/lib/shelf-case/rules/cont
 /** The finding, the shelves, one line an attribute, and the signature: what a reader needs on one sheet. */
 export function FirstPage({ content, contentSha256, signatures }: ReportInput) {
   const { proposal, study } = content
+  const curve = firstCurve(content)
   return (
     <>
       <Text style={{ fontSize: 9.5 }}>
@@ -34,6 +36,7 @@ export function FirstPage({ content, contentSha256, signatures }: ReportInput) {
         </View>
       </View>
       <Shelves content={content} />
+      {curve ? <Curve a={curve} content={content} height={150} /> : null}
       <View style={{ marginTop: 8 }}>
         <View style={style.headRow}>
           <Text style={{ width: 92 }}>Attribute</Text>
@@ -112,7 +115,7 @@ export function Signatures({ content, contentSha256, signatures }: ReportInput) 
   return (
     <View style={{ borderWidth: 1.5, borderColor: '#000', padding: 10, marginTop: 14 }} wrap={false}>
       <View style={{ flexDirection: 'row' }}>
-        <View style={{ width: 200 }}>
+        <View style={{ width: 190, marginRight: 14 }}>
           {signatures.map((s) => (
             <View key={s.id} style={{ marginBottom: 4 }}>
               <Text style={{ fontSize: 13, fontWeight: 700 }}>

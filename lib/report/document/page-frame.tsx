@@ -53,7 +53,7 @@ export function PageFrame({ code, children }: { code: string; children: ReactNod
           <Svg
             width={LOGO_WIDTH * 0.72}
             height={LOGO_HEIGHT * 0.72}
-            viewBox={`0 0 ${LOGO_WIDTH} ${LOGO_HEIGHT}`}
+            viewBox={`0 ${-LOGO_HEIGHT} ${LOGO_WIDTH} ${LOGO_HEIGHT}`}
           >
             <PdfDrawn shapes={logoShapes()} />
           </Svg>

@@ -1,6 +1,6 @@
 import { Text, View } from '@react-pdf/renderer'
 import { style } from '@/lib/report/document/page-frame'
-import { figure, weekText } from '@/lib/report/rules'
+import { figure, minuteText, weekText } from '@/lib/report/rules'
 import { attributes, type AttributeKey } from '@/lib/reading/schema/attributes'
 import type { CaseContent, ReadingEvidence } from '@/lib/shelf-case/rules/content'
 
@@ -26,14 +26,14 @@ export function ReadingPages({ content }: { content: CaseContent }) {
           <Text style={{ flex: 1 }}>by</Text>
         </View>
         {content.readings.map((r, i) => (
-          <Row key={i} r={r} />
+          <Row key={i} r={r} zone={content.lab.timeZone} />
         ))}
       </View>
     </>
   )
 }
 
-function Row({ r }: { r: ReadingEvidence }) {
+function Row({ r, zone }: { r: ReadingEvidence; zone: string }) {
   const attribute = attributes[r.attribute as AttributeKey]
   const isGone = r.state === 'superseded' || r.state === 'void'
   const struck = isGone ? ({ textDecoration: 'line-through' } as const) : {}
@@ -48,7 +48,7 @@ function Row({ r }: { r: ReadingEvidence }) {
       <Text style={[{ width: 58, textAlign: 'right' }, struck]}>
         {r.word ?? (r.value === null ? '' : figure(r.attribute, r.value))}
       </Text>
-      <Text style={{ width: 80, paddingLeft: 10 }}>{r.measuredAt.slice(0, 16).replace('T', ' ')}</Text>
+      <Text style={{ width: 80, paddingLeft: 10 }}>{minuteText(r.measuredAt, zone)}</Text>
       <Text style={{ flex: 1 }}>
         {r.by}
         {r.state === 'counts' ? '' : `; ${r.state}`}
