@@ -31,7 +31,7 @@ export function judgePassword(password: string, about: { email: string; name: st
   const plain = password.normalize('NFKC').toLowerCase()
   if (isCommon(plain)) return 'This password is one of the first that would be tried. Choose another.'
   const own = [about.email, about.email.split('@')[0] ?? '', about.name].map((word) => word.toLowerCase())
-  if (own.some((word) => word.length > 3 && plain.replaceAll(word, '').length < 4))
+  if (own.some((word) => word.length > 3 && plain.replaceAll(word, '').length < 6))
     return 'This password is little more than your own name or address. Choose another.'
   return null
 }

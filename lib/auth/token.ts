@@ -9,7 +9,7 @@ const hours: Record<TokenKind, number> = { invitation: 7 * 24, reset: 1, setup: 
 
 /** The secret leaves through the caller alone; the database keeps its hash. Earlier ones of its kind end. */
 export async function createToken(trx: Trx, kind: TokenKind, personId: string | null): Promise<string> {
-  const secret = randomBytes(24).toString('base64url')
+  const secret = kind === 'setup' ? codeToType() : randomBytes(24).toString('base64url')
   await trx
     .deleteFrom('token')
     .where('kind', '=', kind)
@@ -22,7 +22,7 @@ export async function createToken(trx: Trx, kind: TokenKind, personId: string | 
       id: newId(),
       kind,
       personId,
-      hash: hashOf(secret),
+      hash: hashOf(kind, secret),
       expiresAt: sql<string>`app_now() + make_interval(hours => ${hours[kind]})`,
     })
     .execute()
@@ -39,7 +39,7 @@ export async function spendToken(
     .updateTable('token')
     .set({ usedAt: sql<string>`app_now()` })
     .where('kind', '=', kind)
-    .where('hash', '=', hashOf(secret))
+    .where('hash', '=', hashOf(kind, secret))
     .where('usedAt', 'is', null)
     .where('expiresAt', '>', sql<string>`app_now()`)
     .returning('personId')
@@ -54,7 +54,7 @@ export async function findTokenPerson(db: Db, kind: TokenKind, secret: string) {
     .innerJoin('person', 'person.id', 'token.personId')
     .select(['person.name', 'person.email'])
     .where('token.kind', '=', kind)
-    .where('token.hash', '=', hashOf(secret))
+    .where('token.hash', '=', hashOf(kind, secret))
     .where('token.usedAt', 'is', null)
     .where('token.expiresAt', '>', sql<string>`app_now()`)
     .where('person.isActive', '=', true)
@@ -62,6 +62,14 @@ export async function findTokenPerson(db: Db, kind: TokenKind, secret: string) {
   return person ?? null
 }
 
-function hashOf(secret: string): string {
-  return createHash('sha256').update(secret.trim()).digest('hex')
+// Read off a console and typed by hand: no letters that look like digits, 100 bits.
+function codeToType(): string {
+  const letters = 'ABCDEFGHJKLMNPQRSTUVWXYZ23456789'
+  const code = [...randomBytes(20)].map((byte) => letters[byte % 32]).join('')
+  return code.replace(/(.{5})(?=.)/g, '$1-')
+}
+
+function hashOf(kind: TokenKind, secret: string): string {
+  const plain = kind === 'setup' ? secret.toUpperCase().replace(/[^A-Z0-9]/g, '') : secret.trim()
+  return createHash('sha256').update(plain).digest('hex')
 }

@@ -33,7 +33,7 @@ export async function receive(
   form.on('fileBegin', (_name, file) => void stored.push(file.filepath))
   try {
     const source = Object.assign(Readable.fromWeb(request.body as Parameters<typeof Readable.fromWeb>[0]), {
-      headers: Object.fromEntries(request.headers),
+      headers: headersOf(request),
       method: request.method,
       url: request.url,
     })
@@ -62,6 +62,12 @@ export async function receive(
 
 export async function discard(filePath: string): Promise<void> {
   await rm(filePath, { force: true })
+}
+
+// Without a length formidable takes the body for empty, unless it is told that it comes in pieces.
+function headersOf(request: Request): Record<string, string> {
+  const headers = Object.fromEntries(request.headers)
+  return headers['content-length'] ? headers : { ...headers, 'transfer-encoding': 'chunked' }
 }
 
 async function typeOf(filePath: string): Promise<string | undefined> {

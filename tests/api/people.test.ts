@@ -1,0 +1,150 @@
+import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import pg from 'pg'
+import { GET as getMails } from '@/app/api/mails/route'
+import { POST as inviteAgain } from '@/app/api/people/[id]/invitation/route'
+import { GET as getPerson, PATCH as patchPerson } from '@/app/api/people/[id]/route'
+import { GET as listPeople, POST as invite } from '@/app/api/people/route'
+import { POST as setUp } from '@/app/api/setup/route'
+import { newId } from '@/lib/db/id'
+import { makeFirstCode } from '@/lib/lab/commands'
+import { call } from '../support/call'
+import { testDatabase, type Signed, type TestDatabase } from '../support/database'
+
+let t: TestDatabase
+let manager: Signed
+
+const answers = {
+  labName: 'New lab',
+  timeZone: 'Europe/Berlin',
+  name: 'Mara Quist',
+  initials: 'MQ',
+  email: 'Mara@Lab.Example',
+  password: 'seven quiet jars on a shelf',
+}
+
+beforeAll(async () => {
+  t = await testDatabase()
+})
+afterAll(() => t.close())
+
+describe('the first manager', () => {
+  it('needs the code from the console, which works once, and only in an empty lab', async () => {
+    const old = await makeFirstCode(t.db)
+    const code = await makeFirstCode(t.db)
+    expect(code).toMatch(/^([A-Z2-9]{5}-){3}[A-Z2-9]{5}$/)
+    const attempt = (given: string, more = {}) => call(setUp, { body: { ...answers, ...more, code: given } })
+    expect((await attempt('WRONG-WRONG-WRONG-WRONG')).status).toBe(422)
+    expect((await attempt(old!)).status).toBe(422)
+    expect((await attempt(code!, { timeZone: 'Mars/Olympus' })).status).toBe(422)
+    expect((await attempt(code!, { password: 'password1234' })).status).toBe(422)
+    // Copied by hand: small letters and missing dashes are taken.
+    const typed = code!.toLowerCase().replaceAll('-', ' ')
+    const [first, second] = await Promise.all([attempt(typed), attempt(typed)])
+    expect([first.status, second.status].sort()).toEqual([200, 409])
+    expect(await makeFirstCode(t.db)).toBeNull()
+    const people = await t.owner
+      .selectFrom('person')
+      .select(['email', 'roles'])
+      .where('isSystem', '=', false)
+      .execute()
+    expect(people).toEqual([{ email: 'mara@lab.example', roles: ['manager'] }])
+    manager = await t.person('manager')
+  })
+})
+
+describe('people', () => {
+  const body = (more = {}) => ({
+    id: newId(),
+    email: 'kai@lab.example',
+    name: 'Kai',
+    initials: 'K',
+    roles: ['qa'],
+    ...more,
+  })
+  const change = (cookie: string, id: string, more = {}) =>
+    call(patchPerson, {
+      cookie,
+      method: 'PATCH',
+      params: { id },
+      body: {
+        version: 1,
+        name: 'Kai',
+        initials: 'K',
+        roles: ['qa'],
+        isActive: true,
+        reason: 'as agreed',
+        ...more,
+      },
+    })
+
+  it('are invited by a job that carries no link', async () => {
+    const person = body()
+    expect((await call(invite, { cookie: manager.cookie, body: person })).status).toBe(200)
+    const client = new pg.Client({ connectionString: t.url('stillstand_owner') })
+    await client.connect()
+    const { rows } = await client.query("select data from pgboss.job where name = 'person.mail-invitation'")
+    await client.end()
+    expect(rows).toEqual([{ data: { personId: person.id, invitedBy: manager.actor.name } }])
+    expect((await call(inviteAgain, { cookie: manager.cookie, params: { id: person.id } })).status).toBe(200)
+    const listed = await call(listPeople, { cookie: manager.cookie })
+    expect(listed.body.map((row: { email: string }) => row.email)).toContain('kai@lab.example')
+  })
+
+  it('S05: an address names one person for ever', async () => {
+    const person = body({ email: 'once@lab.example', name: 'Ida Once' })
+    await call(invite, { cookie: manager.cookie, body: person })
+    const taken = await call(invite, { cookie: manager.cookie, body: body({ email: 'ONCE@lab.example' }) })
+    expect(taken.status).toBe(409)
+    await change(manager.cookie, person.id, { name: 'Ida Once', isActive: false })
+    const reused = await call(invite, { cookie: manager.cookie, body: body({ email: 'once@lab.example' }) })
+    expect(reused.status).toBe(409)
+    expect(reused.body.error.sentence).toContain('Ida Once')
+  })
+
+  it('nobody changes their own roles or closes their own account', async () => {
+    const { personId, name, initials } = manager.actor
+    const roles = await change(manager.cookie, personId, { name, initials, roles: ['manager', 'qa'] })
+    const closed = await change(manager.cookie, personId, {
+      name,
+      initials,
+      roles: ['manager'],
+      isActive: false,
+    })
+    expect([roles.status, closed.status]).toEqual([403, 403])
+    const kept = await call(getPerson, { cookie: manager.cookie, params: { id: personId } })
+    expect(kept.body).toMatchObject({ roles: ['manager'], isActive: true, version: 1 })
+    const renamed = await change(manager.cookie, personId, { name: 'New name', initials, roles: ['manager'] })
+    expect(renamed.status).toBe(200)
+  })
+
+  it('a change needs a reason', async () => {
+    const person = await t.person('technician')
+    for (const reason of [undefined, '', '   '])
+      expect((await change(manager.cookie, person.actor.personId, { reason })).status).toBe(422)
+  })
+
+  it('somebody of a client holds that role alone and names the client', async () => {
+    const none = await call(invite, {
+      cookie: manager.cookie,
+      body: body({ email: 'a@x.example', roles: ['client'] }),
+    })
+    const both = body({ email: 'b@x.example', roles: ['client', 'qa'], clientId: newId() })
+    const unknown = body({ email: 'c@x.example', roles: ['client'], clientId: newId() })
+    expect(none.body.error.fields).toHaveProperty('clientId')
+    expect((await call(invite, { cookie: manager.cookie, body: both })).body.error.fields).toHaveProperty(
+      'roles',
+    )
+    expect((await call(invite, { cookie: manager.cookie, body: unknown })).status).toBe(422)
+  })
+
+  it('lose what a changed role no longer allows at once', async () => {
+    const person = await t.person('manager')
+    const { personId, name, initials } = person.actor
+    await change(manager.cookie, personId, { name, initials, roles: ['technician'] })
+    expect((await call(listPeople, { cookie: person.cookie })).status).toBe(401)
+  })
+
+  it('there is no mail page outside the demo', async () => {
+    expect((await call(getMails, { cookie: manager.cookie })).status).toBe(404)
+  })
+})
