@@ -1,0 +1,9 @@
+import { download } from '@/lib/http/route'
+import { getOriginal } from '@/lib/photo/queries'
+import { photoAddress } from '@/lib/photo/schema'
+
+export const GET = download({
+  permission: 'study.read',
+  params: photoAddress,
+  handler: ({ db, actor, params }) => getOriginal(db, actor, params.id),
+})

@@ -1,0 +1,18 @@
+import { read, upload } from '@/lib/http/route'
+import { addPhoto, photoTypes } from '@/lib/photo/commands'
+import { listPhotos } from '@/lib/photo/queries'
+import { maxPhotoBytes, photoFields, photoFilter } from '@/lib/photo/schema'
+
+export const GET = read({
+  permission: 'study.read',
+  query: photoFilter,
+  handler: ({ db, actor, query }) => listPhotos(db, actor, query.study, query.jar),
+})
+
+export const POST = upload({
+  permission: 'photo.add',
+  maxBytes: maxPhotoBytes,
+  types: photoTypes,
+  fields: photoFields,
+  handler: ({ db, actor, file, fields, now }) => addPhoto(db, actor, file, fields, now),
+})

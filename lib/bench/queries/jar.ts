@@ -1,0 +1,120 @@
+import { sql } from 'kysely'
+import type { Actor } from '@/lib/auth/actor'
+import type { Db } from '@/lib/db/client'
+import { refuse } from '@/lib/http/errors'
+import { readJarCode } from '@/lib/jar/rules'
+import { spokenDay } from '@/lib/study/rules/calendar'
+import { jarsToRead } from './jars'
+import { getLabDay } from './lab-day'
+import { benchJar } from './today'
+import { listCurrentSeries, listInitialMeans, listLastReadings } from './values'
+
+export type BenchJarPage = Awaited<ReturnType<typeof getBenchJar>>
+
+/** Everything the pull screen needs of one jar, whichever of its pulls is to be read now. */
+export async function getBenchJar(db: Db, _actor: Actor, typedCode: string) {
+  const code = readJarCode(typedCode) ?? typedCode.trim().toUpperCase()
+  const { zone, now, today } = await getLabDay(db)
+  const row = await jarsToRead(db)
+    .select(['jar.version as jarVersion'])
+    .where('jar.code', '=', code)
+    // What is to be read comes before what was read, then the earliest due, then the newest read.
+    .orderBy(sql`pj.state in ('due', 'resting') desc`)
+    .orderBy(sql`case when pj.state in ('due', 'resting') then pull.due_on end`)
+    .orderBy('pull.dueOn', 'desc')
+    .limit(1)
+    .executeTakeFirst()
+  if (!row) throw refuse.notFound(await whyNotToRead(db, code))
+  const only = { batchId: row.batchId, studyStationId: row.studyStationId }
+  const values = {
+    zone,
+    series: await listCurrentSeries(db, [row.studyId]),
+    readings: await listLastReadings(db, [row.studyId], 3, only),
+    initials: await listInitialMeans(db, [row.studyId]),
+  }
+  const jar = benchJar(row, values, today, now)
+  const done = await db
+    .selectFrom('reading as r')
+    .innerJoin('person', 'person.id', 'r.recordedBy')
+    .select([
+      'r.id',
+      'r.attribute',
+      'r.replicate',
+      'r.value',
+      'r.word',
+      'r.typed',
+      'r.measuredAt',
+      'r.isVoid',
+    ])
+    .select(['r.supersedesId', 'r.reason', 'person.initials as by'])
+    .select((eb) => eb.ref('r.doubts').$castTo<{ reason: string; sentence: string }[]>().as('doubts'))
+    .where('r.pullJarId', '=', row.pullJarId)
+    .orderBy('r.recordedAt')
+    .orderBy('r.id')
+    .execute()
+  return {
+    ...jar,
+    today,
+    now,
+    zone,
+    endWeeks: row.endWeeks,
+    isStudyRunning: row.studyState === 'running',
+    station: {
+      id: row.stationId,
+      studyStationId: row.studyStationId,
+      name: row.stationName,
+      kind: row.stationKind,
+      temperatureC: row.temperatureC,
+      isFreezeThaw: row.isFreezeThaw,
+      voice: row.voice,
+      caution: row.caution,
+    },
+    tareG: row.tareG,
+    grossG: row.grossG,
+    fillHeightMm: row.fillHeightMm ?? row.plan.fillHeightMm,
+    pack: row.plan.pack,
+    note: row.note,
+    /** Not due yet: what the screen says instead of offering fields. */
+    isEarly: row.state === 'due' && row.windowFrom > today,
+    instruments: await listUsableInstruments(db, today),
+    /** What was already read of this jar in this pull, with corrections and voids. */
+    readings: done,
+  }
+}
+
+async function listUsableInstruments(db: Db, today: string) {
+  const rows = await db
+    .selectFrom('instrument')
+    .leftJoinLateral(
+      (eb) =>
+        eb
+          .selectFrom('calibration')
+          .select(['calibration.dueOn', 'calibration.result'])
+          .whereRef('calibration.instrumentId', '=', 'instrument.id')
+          .orderBy('calibration.calibratedAt', 'desc')
+          .limit(1)
+          .as('newest'),
+      (join) => join.onTrue(),
+    )
+    .select(['instrument.id', 'instrument.code', 'instrument.kind', 'instrument.name'])
+    .select(['newest.dueOn', 'newest.result'])
+    .select((eb) =>
+      eb.ref('instrument.spindles').$castTo<{ name: string; constant: number }[]>().as('spindles'),
+    )
+    .where('instrument.isActive', '=', true)
+    .orderBy('instrument.code')
+    .execute()
+  return rows.map((row) => ({ ...row, isOverdue: row.dueOn === null || row.dueOn < today }))
+}
+
+async function whyNotToRead(db: Db, code: string): Promise<string> {
+  const jar = await db
+    .selectFrom('jar')
+    .innerJoin('study', 'study.id', 'jar.studyId')
+    .select(['jar.code', 'jar.kind', 'jar.state', 'study.code as studyCode', 'study.startedOn'])
+    .where('jar.code', '=', code)
+    .executeTakeFirst()
+  if (!jar) return `No jar has the code ${code.slice(0, 20)}. Read the label again.`
+  const since = `study ${jar.studyCode}, since ${spokenDay(jar.startedOn)}`
+  return `Jar ${jar.code} is a ${jar.kind} jar (${jar.state}) of ${since}; nothing is asked of it.`
+}

@@ -1,0 +1,74 @@
+import { sql } from 'kysely'
+import type { Db, Trx } from '@/lib/db/client'
+import type { ProtocolPlan } from '@/lib/protocol/schema'
+
+export type BenchJarRow = Awaited<ReturnType<ReturnType<typeof jarsToRead>['execute']>>[number]
+
+/** One row per jar asked for in a pull, with where it stands and who has it. */
+export function jarsToRead(db: Db | Trx) {
+  return db
+    .selectFrom('pullJar as pj')
+    .innerJoin('pull', 'pull.id', 'pj.pullId')
+    .innerJoin('study', 'study.id', 'pj.studyId')
+    .innerJoin('studyStation as ss', 'ss.id', 'pull.studyStationId')
+    .innerJoin('station', 'station.id', 'ss.stationId')
+    .innerJoin('jar', 'jar.id', 'pj.jarId')
+    .innerJoin('batch', 'batch.id', 'jar.batchId')
+    .innerJoin('formulaVersion as fv', 'fv.id', 'batch.formulaVersionId')
+    .innerJoin('formula', 'formula.id', 'fv.formulaId')
+    .leftJoin('person as opener', 'opener.id', 'pj.openedBy')
+    .leftJoin('person as closer', 'closer.id', 'pj.closedBy')
+    .select([
+      'pj.id as pullJarId',
+      'pj.version',
+      'pj.asks',
+      'pj.state',
+      'pj.attribute',
+      'pj.repeatOf',
+      'pj.openedBy',
+      'pj.openedAt',
+      'opener.name as openerName',
+      'opener.initials as openerInitials',
+      'pj.takenAt',
+      'pj.restUntil',
+      'pj.closedAt',
+      'closer.name as closerName',
+      'closer.initials as closerInitials',
+      'pj.missedReason',
+      'pj.note',
+      'pull.id as pullId',
+      'pull.timeWeeks',
+      'pull.label',
+      'pull.dueOn',
+      'pull.windowFrom',
+      'pull.windowTo',
+      'study.id as studyId',
+      'study.code as studyCode',
+      'study.title as studyTitle',
+      'study.state as studyState',
+      'study.startedAt',
+      'study.endWeeks',
+      'ss.id as studyStationId',
+      'ss.isFreezeThaw',
+      'ss.voice',
+      'ss.temperatureC',
+      'station.id as stationId',
+      'station.name as stationName',
+      'station.kind as stationKind',
+      'station.caution',
+      'jar.id as jarId',
+      'jar.code',
+      'jar.kind',
+      'jar.state as jarState',
+      'jar.shelf',
+      'jar.place',
+      'jar.tareG',
+      'jar.grossG',
+      'jar.fillHeightMm',
+      'batch.id as batchId',
+      'batch.code as batchCode',
+      'formula.name as formulaName',
+      'formula.emulsionType',
+    ])
+    .select(sql<ProtocolPlan>`study.plan`.as('plan'))
+}

@@ -1,0 +1,9 @@
+import { z } from '@/lib/http/zod'
+
+export const benchDay = z.object({ today: z.iso.date().optional() })
+export const benchJarAddress = z.object({ code: z.string().trim().min(1).max(60) })
+
+export const benchKeys = {
+  today: '/api/bench',
+  jar: (code: string) => `/api/bench/${encodeURIComponent(code)}`,
+}

@@ -1,0 +1,69 @@
+import { access, mkdir, open, readdir, readFile, rename, rm, stat } from 'node:fs/promises'
+import path from 'node:path'
+import { newId } from '@/lib/db/id'
+import type { Storage } from './storage'
+
+const temporary = '.incoming'
+
+/** Files in a folder: written beside, flushed, then moved to their name, so that a name never holds half a file. */
+export function folderStorage(folder: string): Storage {
+  const root = path.resolve(folder)
+  return {
+    async put(key, source) {
+      const target = placeOf(root, key)
+      const incoming = path.join(root, temporary)
+      await mkdir(incoming, { recursive: true })
+      await mkdir(path.dirname(target), { recursive: true })
+      const beside = path.join(incoming, newId())
+      try {
+        await write(beside, typeof source === 'string' ? await readFile(source) : source)
+        await rename(beside, target)
+      } finally {
+        await rm(beside, { force: true })
+      }
+    },
+    async get(key) {
+      return readFile(placeOf(root, key)).catch(absent)
+    },
+    async has(key) {
+      return access(placeOf(root, key)).then(
+        () => true,
+        () => false,
+      )
+    },
+    async deleteTemp(olderThanMs) {
+      const incoming = path.join(root, temporary)
+      const names = (await readdir(incoming).catch(absent)) ?? []
+      let removed = 0
+      for (const name of names) {
+        const file = path.join(incoming, name)
+        const { mtimeMs } = await stat(file)
+        if (Date.now() - mtimeMs < olderThanMs) continue
+        await rm(file, { force: true })
+        removed += 1
+      }
+      return removed
+    },
+  }
+}
+
+/** Keys are made by the program (hashes); the check keeps a mistake from leaving the folder. */
+function placeOf(root: string, key: string): string {
+  if (!/^[a-z]+\/[a-z0-9/]+(\.[a-z]+)?$/.test(key)) throw new Error(`Not a key of a stored file: ${key}`)
+  return path.join(root, key)
+}
+
+async function write(file: string, bytes: Uint8Array): Promise<void> {
+  const handle = await open(file, 'wx')
+  try {
+    await handle.writeFile(bytes)
+    await handle.sync()
+  } finally {
+    await handle.close()
+  }
+}
+
+function absent(error: NodeJS.ErrnoException): null {
+  if (error.code === 'ENOENT') return null
+  throw error
+}

@@ -1,0 +1,18 @@
+import { env } from '@/lib/env'
+import { folderStorage } from './folder'
+import { s3Storage } from './s3'
+
+/** Where files are kept. A key that has a file has a whole file. */
+export type Storage = {
+  /** From a whole file on disk (its path) or from bytes. */
+  put(key: string, source: string | Uint8Array, type: string): Promise<void>
+  get(key: string): Promise<Uint8Array | null>
+  has(key: string): Promise<boolean>
+  /** Removes what an interrupted `put` left behind longer ago than this. */
+  deleteTemp(olderThanMs: number): Promise<number>
+}
+
+export function storage(): Storage {
+  const { s3, filesFolder } = env()
+  return s3 ? s3Storage(s3) : folderStorage(filesFolder)
+}

@@ -1,0 +1,84 @@
+import { readFile } from 'node:fs/promises'
+import type { Actor } from '@/lib/auth/actor'
+import type { Trx } from '@/lib/db/client'
+import { storage } from '@/lib/files/storage'
+import { refuse } from '@/lib/http/errors'
+import type { Received } from '@/lib/http/upload'
+import { enqueue } from '@/lib/jobs/enqueue'
+import { claimedInstant } from '@/lib/reading/rules/claimed-time'
+import { previewQueue } from './jobs'
+import { imageSize, originalKey } from './rules'
+import { maxPhotoPixels, type PhotoFields } from './schema'
+
+const heic = ['image/heic', 'image/heif', 'image/heic-sequence', 'image/heif-sequence']
+/** What the upload lets through to here, the last of them only to be refused with a way out. */
+export const photoTypes = ['image/jpeg', 'image/png', ...heic]
+
+/** The file is stored whole under its hash before the row names it. Sending it twice keeps one. */
+export async function addPhoto(trx: Trx, actor: Actor, file: Received, fields: PhotoFields, now: string) {
+  const jar = await findJar(trx, fields.pullJarId)
+  const known = await trx
+    .selectFrom('photo')
+    .select(['id', 'sha256'])
+    .where('id', '=', fields.id)
+    .executeTakeFirst()
+  if (known) {
+    if (known.sha256 !== file.sha256)
+      throw refuse.conflict('Another photo was sent under this id. Send this one anew.')
+    return { id: known.id }
+  }
+  const size = await checkPicture(file)
+  const files = storage()
+  const key = originalKey(file.sha256)
+  if (!(await files.has(key))) await files.put(key, file.path, file.type)
+  await trx
+    .insertInto('photo')
+    .values({
+      id: fields.id,
+      studyId: jar.studyId,
+      jarId: jar.jarId,
+      pullJarId: fields.pullJarId,
+      sha256: file.sha256,
+      bytes: file.bytes,
+      type: file.type,
+      ...size,
+      originalName: file.originalName,
+      takenBy: actor.personId,
+      takenAt: claimedInstant(fields, now).measuredAt,
+    })
+    .execute()
+  await enqueue(trx, previewQueue, { sha256: file.sha256 })
+  return { id: fields.id }
+}
+
+async function findJar(trx: Trx, pullJarId: string) {
+  const jar = await trx
+    .selectFrom('pullJar')
+    .innerJoin('jar', 'jar.id', 'pullJar.jarId')
+    .innerJoin('study', 'study.id', 'pullJar.studyId')
+    .select(['study.id as studyId', 'study.code as studyCode', 'study.state', 'jar.id as jarId', 'jar.code'])
+    .where('pullJar.id', '=', pullJarId)
+    .executeTakeFirst()
+  if (!jar) throw refuse.notFound('There is no such jar in a pull.')
+  if (jar.state === 'closed') {
+    throw refuse.conflict(`Study ${jar.studyCode} is closed, so jar ${jar.code} takes no more photos.`)
+  }
+  return jar
+}
+
+async function checkPicture(file: Received): Promise<{ width: number; height: number }> {
+  if (heic.includes(file.type)) {
+    throw refuse.unsupported(
+      'This photo is HEIC, which browsers cannot show. Set the camera to the most compatible format (JPEG), or save the photo as JPEG, and send it again.',
+    )
+  }
+  const size = imageSize(await readFile(file.path))
+  if (!size) throw refuse.unsupported('This file starts like a picture but is none. Take the photo again.')
+  if (size.width * size.height > maxPhotoPixels) {
+    const megapixels = Math.round((size.width * size.height) / 1e6)
+    throw refuse.tooLarge(
+      `The photo has ${megapixels} megapixels; at most ${maxPhotoPixels / 1e6} can be taken. Take it at a lower resolution.`,
+    )
+  }
+  return size
+}

@@ -1,0 +1,26 @@
+import { z } from '@/lib/http/zod'
+import { deviceTimes } from '@/lib/reading/schema/entry'
+
+export const photoAddress = z.object({ id: z.uuid() })
+
+/** Fields of the form that carries the picture; the file is named `photo`. */
+export const photoFields = deviceTimes.extend({ id: z.uuid(), pullJarId: z.uuid() })
+export type PhotoFields = z.output<typeof photoFields>
+
+export const photoFilter = z.object({
+  study: z.string().trim().min(1).max(40),
+  jar: z.string().max(20).optional(),
+})
+
+export const maxPhotoBytes = 25 * 1024 * 1024
+export const maxPhotoPixels = 40_000_000
+export const previewWidth = 480
+
+export const photoKeys = {
+  add: '/api/photos',
+  ofStudy: (study: string) => `/api/photos?study=${encodeURIComponent(study)}`,
+  ofJar: (study: string, jar: string) =>
+    `/api/photos?study=${encodeURIComponent(study)}&jar=${encodeURIComponent(jar)}`,
+  preview: (id: string) => `/api/photos/${id}/preview`,
+  original: (id: string) => `/api/photos/${id}/original`,
+}

@@ -1,0 +1,90 @@
+import { sql } from 'kysely'
+import type { Db, Trx } from '@/lib/db/client'
+import type { ProtocolPlan } from '@/lib/protocol/schema'
+
+export type UsedInstrument = {
+  id: string
+  code: string
+  kind: string
+  spindles: { name: string; constant: number }[]
+  dueOn: string | null
+  result: string | null
+}
+export type CycleHalf = {
+  cycle: number
+  half: string
+  reachedC: number | null
+  isFrozenThrough: boolean | null
+}
+export type PullJar = NonNullable<Awaited<ReturnType<typeof findPullJar>>>
+
+/** One jar asked for in a pull, with all that a reading of it is judged by. */
+export async function findPullJar(db: Db | Trx, pullJarId: string, instrumentIds: string[] = []) {
+  return db
+    .selectFrom('pullJar as pj')
+    .innerJoin('pull', 'pull.id', 'pj.pullId')
+    .innerJoin('study', 'study.id', 'pj.studyId')
+    .innerJoin('studyStation as ss', 'ss.id', 'pull.studyStationId')
+    .innerJoin('station', 'station.id', 'ss.stationId')
+    .innerJoin('jar', 'jar.id', 'pj.jarId')
+    .leftJoin('person as opener', 'opener.id', 'pj.openedBy')
+    .leftJoin('person as closer', 'closer.id', 'pj.closedBy')
+    .select([
+      'pj.id',
+      'pj.version',
+      'pj.asks',
+      'pj.state',
+      'pj.attribute',
+      'pj.repeatOf',
+      'pj.openedBy',
+      'pj.openedAt',
+      'opener.name as openerName',
+      'opener.initials as openerInitials',
+      'pj.takenAt',
+      'pj.closedBy',
+      'pj.closedAt',
+      'closer.name as closerName',
+      'closer.initials as closerInitials',
+      'pj.missedReason',
+      'pull.id as pullId',
+      'pull.label',
+      'pull.timeWeeks',
+      'pull.dueOn',
+      'pull.windowFrom',
+      'pull.windowTo',
+      'study.id as studyId',
+      'study.code as studyCode',
+      'study.state as studyState',
+      'study.startedAt',
+      'ss.id as studyStationId',
+      'ss.isFreezeThaw',
+      'ss.temperatureC',
+      'station.name as stationName',
+      'station.cycleLowC',
+      'station.cycleHighC',
+      'jar.id as jarId',
+      'jar.code',
+      'jar.kind',
+      'jar.state as jarState',
+      'jar.batchId',
+      'jar.tareG',
+      'jar.grossG',
+      'jar.fillHeightMm',
+    ])
+    .select([
+      sql<ProtocolPlan>`study.plan`.as('plan'),
+      sql<string>`app_now()`.as('now'),
+      sql<
+        UsedInstrument[]
+      >`(select coalesce(jsonb_agg(jsonb_build_object('id', i.id, 'code', i.code, 'kind', i.kind,
+          'spindles', i.spindles, 'dueOn', c.due_on, 'result', c.result)), '[]')
+        from instrument i left join lateral (select due_on, result from calibration
+          where instrument_id = i.id order by calibrated_at desc, id desc limit 1) c on true
+        where i.id = any(${instrumentIds}::uuid[]))`.as('instruments'),
+      sql<CycleHalf[]>`(select coalesce(jsonb_agg(jsonb_build_object('cycle', step.cycle, 'half', step.half,
+          'reachedC', step.reached_c, 'isFrozenThrough', step.is_frozen_through)), '[]')
+        from cycle_step step where step.study_station_id = ss.id)`.as('cycleHalves'),
+    ])
+    .where('pj.id', '=', pullJarId)
+    .executeTakeFirst()
+}

@@ -1,0 +1,24 @@
+import { z } from '@/lib/http/zod'
+
+export const pullJarAddress = z.object({ id: z.uuid() })
+const version = z.number().int().positive()
+
+/** `takeOver`: someone else has the jar open, and I go on with it nevertheless. */
+export const openingOfJar = z.object({ version, takeOver: z.boolean().default(false) })
+export const takingOut = z.object({ version })
+export const missedJar = z.object({
+  version,
+  reason: z.string().trim().min(1, 'Say why the jar was not read.').max(500),
+  /** Broken or not to be found: it is lost for later pulls as well. */
+  isJarLost: z.boolean().default(false),
+})
+export type OpeningOfJar = z.output<typeof openingOfJar>
+export type TakingOut = z.output<typeof takingOut>
+export type MissedJar = z.output<typeof missedJar>
+
+export const pullKeys = {
+  open: (pullJarId: string) => `/api/pulls/${pullJarId}/open`,
+  takeOut: (pullJarId: string) => `/api/pulls/${pullJarId}/take-out`,
+  miss: (pullJarId: string) => `/api/pulls/${pullJarId}/miss`,
+  readings: (pullJarId: string) => `/api/pulls/${pullJarId}/readings`,
+}

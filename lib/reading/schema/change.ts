@@ -1,0 +1,32 @@
+import { z } from '@/lib/http/zod'
+import { entryDetail } from './entry'
+
+const reason = z.string().trim().min(1, 'A reading is changed only with a reason. Say why.').max(500)
+
+/** A correction is a new reading that supersedes the old one; both stay on record. */
+export const correction = z.object({
+  id: z.uuid(),
+  typed: z.string().min(1, 'Type what it should be.').max(200),
+  detail: entryDetail.default({}),
+  instrumentId: z.uuid().nullish(),
+  isConfirmed: z.boolean().default(false),
+  reason,
+})
+export type Correction = z.output<typeof correction>
+
+export const voiding = z.object({ id: z.uuid(), reason })
+export type Voiding = z.output<typeof voiding>
+
+export const readingAddress = z.object({ id: z.uuid() })
+
+export const readingFilter = z.object({
+  study: z.string().trim().min(1).max(40),
+  attribute: z.string().max(40).optional(),
+})
+
+export const readingKeys = {
+  ofStudy: (study: string) => `/api/readings?study=${encodeURIComponent(study)}`,
+  history: (id: string) => `/api/readings/${id}`,
+  correct: (id: string) => `/api/readings/${id}/correct`,
+  void: (id: string) => `/api/readings/${id}/void`,
+}

@@ -1,0 +1,61 @@
+import { z } from '@/lib/http/zod'
+import { attributeKey } from './attributes'
+
+const measured = z.number().min(-1e12).max(1e12)
+
+/** What belongs to the number: how it was come by. Heights in mm, mass in g, temperature in °C. */
+export const entryDetail = z.strictObject({
+  torquePercent: measured.optional(),
+  spindle: z.string().trim().max(60).optional(),
+  rpm: measured.optional(),
+  topMm: measured.optional(),
+  bottomMm: measured.optional(),
+  totalMm: measured.optional(),
+  /** Film, beads or drops without a layer, 0 to 4. */
+  bleed: z.number().int().optional(),
+  grossG: measured.optional(),
+  word: z.string().max(60).optional(),
+  sampleTemperatureC: measured.optional(),
+})
+export type EntryDetail = z.infer<typeof entryDetail>
+
+/**
+ * One field as it was typed. `typed` is kept letter by letter; with a torque it is the torque's text, for layers
+ * and masses any text that says what was read, else it is the value itself.
+ */
+export const entry = z.object({
+  id: z.uuid(),
+  attribute: attributeKey,
+  replicate: z.number().int().min(1).max(9).default(1),
+  typed: z.string().min(1, 'Type what was read.').max(200),
+  detail: entryDetail.default({}),
+  instrumentId: z.uuid().nullish(),
+  /** The person was asked whether it is so, and it is. */
+  isConfirmed: z.boolean().default(false),
+})
+export type Entry = z.output<typeof entry>
+
+/** Two people read one jar: both stay on record, one counts, and the person says why. */
+export const resolution = z.object({
+  count: z.enum(['mine', 'theirs']),
+  reason: z.string().trim().min(1, 'Say why this one counts.').max(500),
+})
+
+/** Times as the device says them; the server corrects them by the device's own error. */
+export const deviceTimes = z.object({
+  deviceNow: z.iso.datetime({ offset: true }),
+  claimedAt: z.iso.datetime({ offset: true }),
+})
+
+export const readingsOfJar = deviceTimes.extend({
+  version: z.number().int().positive(),
+  note: z.string().trim().max(2000).default(''),
+  readings: z.array(entry).min(1, 'There is nothing to keep: fill in at least one field.').max(60),
+  /** What the protocol asks for and is knowingly not read. */
+  leaveOut: z.array(attributeKey).default([]),
+  resolution: resolution.optional(),
+})
+export type ReadingsOfJar = z.input<typeof readingsOfJar>
+
+export const jarToLog = readingsOfJar.extend({ pullJarId: z.uuid() })
+export type JarToLog = z.output<typeof jarToLog>

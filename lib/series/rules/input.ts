@@ -1,0 +1,153 @@
+import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { mean } from '@/lib/science/mean'
+import { phaseFraction } from '@/lib/science/phase-fraction'
+import { separationDetectionLimit } from '@/lib/science/separation'
+import type { ReadingDoubt, SeriesInput, SeriesReading } from '@/lib/science/series'
+import { dayIn } from '@/lib/study/rules/calendar'
+import type { EntryDoubt, Frame, FrameBatch, FrameFlag, FrameReading, FrameStation } from '../queries/frame'
+import { isOnShiftedDay, type ShiftedDay } from './shifted-day'
+
+/** The replicates of one attribute that one jar gave in one pull. */
+export type JarReading = {
+  id: string
+  ids: string[]
+  rows: FrameReading[]
+  doubts: EntryDoubt[]
+  day: string
+}
+
+/** One series with what its readings are called in the record. */
+export type Unit = {
+  batch: FrameBatch
+  station: FrameStation
+  attribute: AttributeKey
+  input: SeriesInput
+  jars: JarReading[]
+}
+
+const weekMs = 604_800_000
+/** By definition nothing has happened yet at the start, whether or not somebody wrote it down. */
+const startsAtZero = new Set<AttributeKey>(['separation', 'look', 'odour', 'mass'])
+
+/** What the rules are given, per batch, station and attribute of the study's plan. */
+export function seriesUnits(
+  frame: Frame,
+  only: ReadonlySet<string> | null,
+  shifted: readonly ShiftedDay[],
+): Unit[] {
+  const units: Unit[] = []
+  for (const batch of frame.study.batches) {
+    for (const planned of frame.study.plan.attributes) {
+      if (only && !only.has(planned.attribute)) continue
+      const initial = initialOf(frame, batch.id, planned.attribute)
+      if (initial.length === 0) continue
+      const s = repeatabilitySd(planned.attribute, batch, mean(initial), frame.study.plan.fillHeightMm)
+      for (const station of frame.study.stations) {
+        const jars = jarReadings(frame, batch.id, station.id, planned.attribute)
+        units.push({
+          batch,
+          station,
+          attribute: planned.attribute,
+          jars,
+          input: {
+            attribute: planned.attribute,
+            tolerance: planned.tolerance,
+            endTime: frame.study.endWeeks,
+            repeatabilitySd: s,
+            isSeparation: planned.attribute === 'separation',
+            ...(planned.attribute === 'separation'
+              ? { detectionLimit: separationDetectionLimit(frame.study.plan.fillHeightMm) }
+              : {}),
+            initial,
+            initialTime: 0,
+            readings: jars.map((jar) => seriesReading(frame, jar, jars, shifted)),
+          },
+        })
+      }
+    }
+  }
+  return units
+}
+
+/** SD of one replicate in the unit of the attribute; the method of a high internal phase scatters more. */
+export function repeatabilitySd(
+  key: AttributeKey,
+  batch: FrameBatch,
+  initial: number,
+  fillHeightMm: number,
+): number {
+  // A ruler reads a millimetre, whatever the jar's height.
+  if (key === 'separation') return 100 / fillHeightMm
+  const { kind, sd, highInternalPhaseSd } = attributeOf(key).repeatability
+  const ofMethod = isHighInternalPhase(batch) ? highInternalPhaseSd : sd
+  return kind === 'relative' ? ofMethod * Math.abs(initial) : ofMethod
+}
+
+export function initialOf(frame: Frame, batchId: string, attribute: AttributeKey): number[] {
+  const values = frame.readings
+    .filter((r) => r.studyStationId === null && r.batchId === batchId && r.attribute === attribute)
+    .flatMap((r) => (r.value === null ? [] : [r.value]))
+  return values.length === 0 && startsAtZero.has(attribute) ? [0] : values
+}
+
+function isHighInternalPhase(batch: FrameBatch): boolean {
+  return batch.lines.length > 0 && phaseFraction({ lines: batch.lines }).highInternalPhase
+}
+
+function jarReadings(frame: Frame, batchId: string, studyStationId: string, attribute: string): JarReading[] {
+  const byJar = new Map<string, FrameReading[]>()
+  for (const row of frame.readings) {
+    if (row.batchId !== batchId || row.studyStationId !== studyStationId || row.attribute !== attribute)
+      continue
+    if (row.value === null) continue
+    const key = row.pullJarId ?? row.id
+    byJar.set(key, [...(byJar.get(key) ?? []), row])
+  }
+  return [...byJar.values()].map((rows) => {
+    const [first] = rows as [FrameReading]
+    return {
+      id: first.id,
+      ids: rows.map((row) => row.id),
+      rows,
+      doubts: rows.flatMap((row) => row.doubts),
+      day: first.dueOn ?? dayIn(frame.study.zone, first.measuredAt),
+    }
+  })
+}
+
+function seriesReading(
+  frame: Frame,
+  jar: JarReading,
+  all: readonly JarReading[],
+  shifted: readonly ShiftedDay[],
+): SeriesReading {
+  const [first] = jar.rows as [FrameReading]
+  const flags = frame.flags.filter((flag) => flag.readingId !== null && jar.ids.includes(flag.readingId))
+  const repeated = first.repeatOf && all.find((other) => other.rows[0]!.pullJarId === first.repeatOf)
+  const shift = shifted.find((day) => isOnShiftedDay(day, first, frame.study.zone))
+  return {
+    id: jar.id,
+    time: Math.max(0, (Date.parse(first.measuredAt) - Date.parse(frame.study.startedAt)) / weekMs),
+    day: jar.day,
+    jar: first.jarCode ?? first.jarId ?? '',
+    values: jar.rows.map((row) => row.value!),
+    doubts: [
+      ...doubtsOf(jar, flags),
+      ...(shift ? [{ reason: shift.reason, settled: shift.settles === 'doubt' }] : []),
+    ],
+    ...(repeated ? { isRepeatOf: repeated.id } : {}),
+    ...(flags.some((flag) => flag.settles === 'reading') || shift?.settles === 'reading'
+      ? { isSetAside: true }
+      : {}),
+  }
+}
+
+/** What was found at the entry, and what the rules themselves may find, with what a person set aside. */
+function doubtsOf(jar: JarReading, flags: FrameFlag[]): ReadingDoubt[] {
+  const settled = new Set(flags.filter((flag) => flag.settles === 'doubt').map((flag) => flag.rule))
+  const found = new Set(jar.doubts.map((doubt) => doubt.reason))
+  return [
+    ...[...found].map((reason) => ({ reason, settled: settled.has(reason) })),
+    ...[...settled].filter((rule) => !found.has(rule)).map((reason) => ({ reason, settled: true })),
+  ]
+}

@@ -1,0 +1,28 @@
+import type { AttributeKey } from '@/lib/reading/schema/attributes'
+import { shownWithUnit } from '@/lib/study/rules/words'
+import type { SentenceContext } from '@/lib/science/sentence'
+import { addDays, dayIn, spokenDay } from '@/lib/study/rules/calendar'
+import { degrees, inSentence } from '@/lib/study/rules/finding'
+import type { Frame, FrameStation } from '../queries/frame'
+
+export function stationWords(station: Pick<FrameStation, 'isFreezeThaw' | 'temperatureC' | 'name'>): string {
+  if (station.isFreezeThaw) return 'freeze-thaw'
+  return station.temperatureC === null ? station.name : degrees(station.temperatureC)
+}
+
+/** How the rules' sentences name a series of this study. */
+export function sentenceContext(
+  study: Pick<Frame['study'], 'startedAt' | 'zone'>,
+  station: FrameStation,
+  attribute: AttributeKey,
+): SentenceContext {
+  const startedOn = dayIn(study.zone, study.startedAt)
+  return {
+    station: stationWords(station),
+    attribute: inSentence(attribute),
+    value: (value) => shownWithUnit(attribute, value),
+    when: (time) =>
+      `week ${Math.round(time)} (${spokenDay(addDays(startedOn, Math.round(time * 7)), false)})`,
+    isRelative: attribute === 'viscosity',
+  }
+}
