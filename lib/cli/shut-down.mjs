@@ -1,3 +1,4 @@
+import { readFileSync } from 'node:fs'
 import { explain, interrupt, resume } from './steps.mjs'
 
 /**
@@ -61,14 +62,27 @@ export function orderlyEnd() {
   }
 }
 
-// A killed npm sends no signal, but leaves us to another parent.
+// A killed npm sends no signal, but leaves us, or the shell between it and us, to another parent.
 function watchParent(onGone) {
   if (!process.env['npm_lifecycle_event']) return
-  const parent = process.ppid
+  const watched = [process.pid]
+  if (/^(sh|dash|bash)$/.test(statOf(process.ppid).name)) watched.push(process.ppid)
+  const parents = () => watched.map((pid) => statOf(pid).parent).join()
+  const before = parents()
   const watching = setInterval(() => {
-    if (process.ppid === parent) return
+    if (parents() === before) return
     clearInterval(watching)
     onGone()
   }, 500)
   watching.unref()
+}
+
+function statOf(pid) {
+  try {
+    const [, name = '', parent = ''] =
+      readFileSync(`/proc/${pid}/stat`, 'utf8').match(/\((.*)\) \S (\d+)/) ?? []
+    return { name, parent }
+  } catch {
+    return { name: '', parent: '' }
+  }
 }

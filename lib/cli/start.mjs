@@ -32,7 +32,8 @@ async function main() {
   await step('Environment', checkEnvironment)
   const host = process.env['HOST'] || '127.0.0.1'
   const port = await choosePort(host)
-  const env = await prepareDatabase({ HOST: host, PORT: String(port), ...publicUrl(port) })
+  const publicUrl = process.env['PUBLIC_URL'] || `http://127.0.0.1:${port}`
+  const env = await prepareDatabase({ HOST: host, PORT: String(port), PUBLIC_URL: publicUrl })
   if (!(await isBuilt(root))) await step('Build', (say) => build(root, env, say))
   await serve({ env, host, port, record })
 }
@@ -46,8 +47,6 @@ async function checkEnvironment() {
   })
   return 'checked'
 }
-
-const publicUrl = (port) => ({ PUBLIC_URL: process.env['PUBLIC_URL'] || `http://127.0.0.1:${port}` })
 
 async function choosePort(host) {
   const given = Number(process.env['PORT']) || null
@@ -87,8 +86,8 @@ async function prepareDatabase(extra) {
 }
 
 async function openOwnCluster(say) {
-  const options = { dataFolder, takesOver: true, say, onDeath: () => void startAgain() }
-  const cluster = await openCluster({ ...options, onStarting: end.with })
+  const options = { dataFolder, takesOver: true, onDeath: () => void startAgain() }
+  const cluster = await openCluster({ ...options, say, onStarting: end.with })
   return cluster
 
   async function startAgain() {

@@ -40,7 +40,7 @@ export async function step(title, work) {
     })
     finish(`+ ${title}: ${outcome} (${secondsSince(started)})`)
   } catch (error) {
-    finish(`x ${title}: failed after ${secondsSince(started)}`)
+    finish(isInterrupted ? `- ${title}: stopped` : `x ${title}: failed after ${secondsSince(started)}`)
     throw error
   } finally {
     clearInterval(ticking)
@@ -71,15 +71,14 @@ let onLongRun = () => undefined
 
 /**
  * Runs a command to its end and returns what it printed.
- * `account` is { uid, gid } to run as; `onLine` sees each line as it comes; `todo` is what to do when it fails.
+ * `account` is { uid, gid } to run as; `onLine` sees each line as it comes; `todo` is what to do when it fails;
+ * `isLong` has it recorded, so that the next start can end it should this process be killed.
  */
-export function run(
-  command,
-  args,
-  { cwd, env, account = {}, input, onLine, todo, what, okCodes = [0] } = {},
-) {
+export function run(command, args, options = {}) {
+  const { cwd, env, account = {}, input, onLine, todo, what, okCodes = [0], isLong = false } = options
   return new Promise((resolve, reject) => {
     const name = what ?? [command, ...args].join(' ')
+    if (isInterrupted) throw new StepFailure(`${name} was not started, because everything is being stopped.`)
     // A group of its own, so that ending it also ends what it started.
     const child = spawn(command, args, { cwd, env, ...account, detached: true, stdio: 'pipe' })
     running.add(child)
