@@ -22,7 +22,7 @@ export const mailsKey = '/api/mails'
 
 /** Whether messages go to the fake and may be read by the manager. */
 export async function hasMailPage(db: Db): Promise<boolean> {
-  return env().smtpUrl === null && Boolean((await findLab(db))?.demoFilledAt)
+  return env().demo && env().smtpUrl === null && Boolean((await findLab(db))?.demoFilledAt)
 }
 
 /** Newest first. Elsewhere than in the demo with its fake there is no such page. */

@@ -269,6 +269,7 @@ describe('demo', () => {
   it('one click lets in only while the database carries the mark', async () => {
     const demo = await t.person('technician', { isDemo: true })
     const real = await newcomer()
+    process.env['STILLSTAND_DEMO'] = 'on'
     const click = (id: string) => call(signIn, { body: { demoPersonId: id } })
     expect((await click(demo.actor.personId)).status).toBe(401)
     await transact(t.owner, systemActor(), {}, (trx) =>
