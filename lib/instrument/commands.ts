@@ -3,7 +3,7 @@ import type { Actor } from '@/lib/auth/actor'
 import type { Trx } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
 import type { changedInstrument, newInstrument } from '@/lib/instrument/schema'
-import { staleEdit } from '@/lib/study/queries/last-change'
+import { expectOne } from '@/lib/trail/queries'
 
 export async function createInstrument(trx: Trx, _actor: Actor, input: z.output<typeof newInstrument>) {
   const same = await trx.selectFrom('instrument').select('id').where('id', '=', input.id).executeTakeFirst()
@@ -30,7 +30,7 @@ export async function changeInstrument(
     .executeTakeFirst()
   if (!instrument) throw refuse.notFound()
   if (instrument.version !== version)
-    throw await staleEdit(trx, 'instrument', id, instrument.code, instrument)
+    await expectOne(trx, undefined, { table: 'instrument', id, thing: instrument.code })
   if (instrument.kind !== fields.kind) {
     throw refuse.conflict(
       `${instrument.code} stays a ${instrument.kind}: its calibrations belong to that kind.`,

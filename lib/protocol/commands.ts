@@ -4,7 +4,7 @@ import type { Actor } from '@/lib/auth/actor'
 import type { Trx } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
 import type { newProtocol, newProtocolVersion, writtenPlan } from '@/lib/protocol/schema'
-import { staleEdit } from '@/lib/study/queries/last-change'
+import { expectOne } from '@/lib/trail/queries'
 
 export async function createProtocol(trx: Trx, actor: Actor, input: z.output<typeof newProtocol>) {
   const same = await trx
@@ -80,7 +80,7 @@ export async function writePlan(
     throw refuse.conflict(`A study follows ${what}, so it is locked. Begin a new version to change the plan.`)
   }
   if (draft.version !== input.version) {
-    throw await staleEdit(trx, 'protocol_version', draft.id, what, { name: draft.name, plan: draft.plan })
+    await expectOne(trx, undefined, { table: 'protocol_version', id: draft.id, thing: what })
   }
   await trx
     .updateTable('protocolVersion')

@@ -3,7 +3,7 @@ import type { Actor } from '@/lib/auth/actor'
 import type { Trx } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
 import type { changedStation, loggedTemperatures, newStation } from '@/lib/station/schema'
-import { staleEdit } from '@/lib/study/queries/last-change'
+import { expectOne } from '@/lib/trail/queries'
 
 export async function createStation(trx: Trx, _actor: Actor, input: z.output<typeof newStation>) {
   const same = await trx.selectFrom('station').select('id').where('id', '=', input.id).executeTakeFirst()
@@ -26,7 +26,8 @@ export async function changeStation(
     .forUpdate()
     .executeTakeFirst()
   if (!station) throw refuse.notFound()
-  if (station.version !== version) throw await staleEdit(trx, 'station', id, station.name, station)
+  if (station.version !== version)
+    await expectOne(trx, undefined, { table: 'station', id, thing: station.name })
   await refuseTakenName(trx, { id, name: fields.name })
   if (station.kind !== fields.kind || station.temperatureC !== fields.temperatureC) {
     const user = await trx

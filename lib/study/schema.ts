@@ -90,7 +90,6 @@ export const studyKeys = {
   curves: (code: string) => `${address(code)}/curves`,
   readings: (code: string) => `${address(code)}/readings`,
   jars: (code: string) => `${address(code)}/jars`,
-  record: (code: string) => `${address(code)}/record`,
   end: (code: string) => `${address(code)}/end`,
   follow: (code: string) => `${address(code)}/follow`,
 }

@@ -6,6 +6,7 @@ import { isBeyondBand, toleranceBand } from '@/lib/science/band'
 import { viscosity, viscosityFactor } from '@/lib/science/viscosity'
 import type { Band } from '@/lib/science/series'
 import type { InitialReading } from '@/lib/study/schema'
+import { inSentence } from './finding'
 import { shownValue } from './words'
 
 export type InitialRow = {
@@ -59,14 +60,17 @@ function refuseMissing(
   const readings = given.filter((one) => one.batchId === batch.id && one.attribute === attribute.attribute)
   if (readings.length === 0) {
     throw refuse.invalid(
-      `${batch.code} has no initial ${inSentence(label)}, and its band is told from the initial. Measure it before the study starts.`,
+      `${batch.code} has no initial ${inSentence(attribute.attribute)}, and its band is told from the initial. Measure it before the study starts.`,
       { initialReadings: `${label} of ${batch.code} is missing.` },
     )
   }
   if (readings.length > 1) {
-    throw refuse.invalid(`The initial ${inSentence(label)} of ${batch.code} is given twice. Leave one out.`, {
-      initialReadings: `${label} of ${batch.code} stands twice.`,
-    })
+    throw refuse.invalid(
+      `The initial ${inSentence(attribute.attribute)} of ${batch.code} is given twice. Leave one out.`,
+      {
+        initialReadings: `${label} of ${batch.code} stands twice.`,
+      },
+    )
   }
 }
 
@@ -82,12 +86,9 @@ function rowOf(
   const wordAt = attribute.words?.indexOf(text.toLowerCase()) ?? -1
   const typed = wordAt === -1 ? readTyped(text) : wordAt
   if (typed === null) {
-    throw refuse.invalid(
-      `The initial ${inSentence(attribute.label)} "${text}" is no number. Type it again.`,
-      {
-        [path]: attribute.words ? `Choose one of: ${attribute.words.join(', ')}.` : 'Type a number.',
-      },
-    )
+    throw refuse.invalid(`The initial ${inSentence(attribute.key)} "${text}" is no number. Type it again.`, {
+      [path]: attribute.words ? `Choose one of: ${attribute.words.join(', ')}.` : 'Type a number.',
+    })
   }
   const { value, detail } = valueOf(planned, reading, typed, path)
   const { lower, upper } = attribute.possible
@@ -144,9 +145,8 @@ function refuseOutside(
   const mean = rows.reduce((sum, row) => sum + row.value, 0) / rows.length
   const band = toleranceBand(planned.tolerance, mean)
   if (!isBeyondBand(band, mean)) return
-  const { label } = attributeOf(planned.attribute)
   throw refuse.invalid(
-    `The initial ${inSentence(label)} of ${batch.code} is ${shownValue(planned.attribute, mean)}, outside its own band (${bandText(planned, band)}). Correct the reading, or the tolerance in the protocol.`,
+    `The initial ${inSentence(planned.attribute)} of ${batch.code} is ${shownValue(planned.attribute, mean)}, outside its own band (${bandText(planned, band)}). Correct the reading, or the tolerance in the protocol.`,
     { [`initialReadings.${index}.typed.0`]: 'Outside its own band.' },
   )
 }
@@ -155,9 +155,4 @@ function bandText(planned: PlannedAttribute, { lower, upper }: Band): string {
   const shown = (value: number) => shownValue(planned.attribute, value)
   if (lower === null) return `at most ${shown(upper!)}`
   return upper === null ? `at least ${shown(lower)}` : `${shown(lower)} to ${shown(upper)}`
-}
-
-/** "pH" keeps its letters; the others are plain words. */
-function inSentence(label: string): string {
-  return label === 'pH' ? label : label.toLowerCase()
 }

@@ -1,6 +1,6 @@
 import { refuse } from '@/lib/http/errors'
 import { jarsAtStation, jarsOfPlan, missingInPlan, stationName } from '@/lib/protocol/rules/plan'
-import type { ProtocolPlan } from '@/lib/protocol/schema'
+import type { PlannedStation, ProtocolPlan } from '@/lib/protocol/schema'
 import { waysToFit } from './plan'
 import { freeIn, type StationOffer } from './stations'
 import { capital, counted } from './words'
@@ -48,45 +48,56 @@ export function refuseStations<T extends StationOffer>(
   chosen: (T | null)[],
   batchCount: number,
 ): T[] {
-  const seen = new Map<string, number>()
-  return plan.stations.map((planned, position) => {
-    const name = stationName(planned, position)
+  const seen = new Set<string>()
+  plan.stations.forEach((planned, position) => {
     const station = chosen[position]
-    const detail = { kind: 'station', position }
-    if (!station) {
-      throw refuse.conflict(
-        `No station of the lab can be ${name}. Ask a manager to add one, or take it out of the protocol.`,
-        detail,
-      )
-    }
-    if (!station.isActive) {
-      throw refuse.conflict(`${station.name} is out of use. Choose another station for ${name}.`, detail)
-    }
-    if (
-      station.kind !== planned.kind ||
-      (planned.kind === 'temperature' && station.temperatureC !== planned.temperatureC)
-    ) {
-      throw refuse.conflict(
-        `${station.name} is no ${name} station. Choose one that keeps what the protocol asks for.`,
-        detail,
-      )
-    }
-    if (seen.has(station.id)) {
-      throw refuse.conflict(
-        `${station.name} is chosen twice. Each station of a protocol needs its own.`,
-        detail,
-      )
-    }
-    seen.set(station.id, position)
-    const needed = jarsAtStation(planned) * batchCount
-    if (freeIn(station) < needed) {
-      throw refuse.conflict(
-        `${station.name} has ${counted(freeIn(station), 'free place')}, ${needed} are needed. Choose another station, or make room there.`,
-        { ...detail, free: freeIn(station), needed },
-      )
-    }
-    return station
+    if (station) refuseChoice(planned, position, station, seen, batchCount)
   })
+  return plan.stations.map((planned, position) => {
+    const station = chosen[position]
+    if (station) return station
+    throw refuse.conflict(
+      `No station of the lab can be ${stationName(planned, position)}. Ask a manager to add one, or take it out of the protocol.`,
+      { kind: 'station', position },
+    )
+  })
+}
+
+function refuseChoice(
+  planned: PlannedStation,
+  position: number,
+  station: StationOffer,
+  seen: Set<string>,
+  batchCount: number,
+): void {
+  const name = stationName(planned, position)
+  const detail = { kind: 'station', position }
+  if (!station.isActive) {
+    throw refuse.conflict(`${station.name} is out of use. Choose another station for ${name}.`, detail)
+  }
+  if (
+    station.kind !== planned.kind ||
+    (planned.kind === 'temperature' && station.temperatureC !== planned.temperatureC)
+  ) {
+    throw refuse.conflict(
+      `${station.name} is no ${name} station. Choose one that keeps what the protocol asks for.`,
+      detail,
+    )
+  }
+  if (seen.has(station.id)) {
+    throw refuse.conflict(
+      `${station.name} is chosen twice. Each station of a protocol needs its own.`,
+      detail,
+    )
+  }
+  seen.add(station.id)
+  const needed = jarsAtStation(planned) * batchCount
+  if (freeIn(station) < needed) {
+    throw refuse.conflict(
+      `${station.name} has ${counted(freeIn(station), 'free place')}, ${needed} are needed. Choose another station, or make room there.`,
+      { ...detail, free: freeIn(station), needed },
+    )
+  }
 }
 
 function grams(value: number): string {

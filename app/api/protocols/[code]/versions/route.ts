@@ -1,0 +1,10 @@
+import { write } from '@/lib/http/route'
+import { beginProtocolVersion } from '@/lib/protocol/commands'
+import { newProtocolVersion, protocolAddress } from '@/lib/protocol/schema'
+
+export const POST = write({
+  permission: 'protocol.write',
+  params: protocolAddress,
+  input: newProtocolVersion,
+  handler: ({ db, actor, params, input }) => beginProtocolVersion(db, actor, params.code, input),
+})

@@ -1,0 +1,17 @@
+import { read, write } from '@/lib/http/route'
+import { changeStation } from '@/lib/station/commands'
+import { getStation } from '@/lib/station/queries'
+import { changedStation, stationAddress } from '@/lib/station/schema'
+
+export const GET = read({
+  permission: 'station.read',
+  params: stationAddress,
+  handler: ({ db, actor, params }) => getStation(db, actor, params.id),
+})
+
+export const PUT = write({
+  permission: 'station.write',
+  params: stationAddress,
+  input: changedStation,
+  handler: ({ db, actor, params, input }) => changeStation(db, actor, params.id, input),
+})

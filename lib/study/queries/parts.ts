@@ -1,0 +1,138 @@
+import { sql } from 'kysely'
+import type { Db } from '@/lib/db/client'
+import type { SeriesFinding, Standing } from '@/lib/science/series'
+
+// The parts that the pages of a study share; each is one statement whatever the study's size.
+
+/** Every jar that a pull asks for, with what became of it. */
+export async function listStudyPullJars(db: Db, studyId: string) {
+  return db
+    .selectFrom('pullJar')
+    .innerJoin('pull', 'pull.id', 'pullJar.pullId')
+    .innerJoin('jar', 'jar.id', 'pullJar.jarId')
+    .leftJoin('person as opener', 'opener.id', 'pullJar.openedBy')
+    .select([
+      'pullJar.id',
+      'pullJar.asks',
+      'pullJar.state',
+      'pullJar.missedReason',
+      'pullJar.closedAt',
+      'pull.id as pullId',
+      'pull.studyStationId',
+      'pull.timeWeeks',
+      'pull.label',
+      'pull.dueOn',
+      'pull.windowFrom',
+      'pull.windowTo',
+      'jar.code',
+      'jar.batchId',
+      'jar.state as jarState',
+      'opener.initials as openedBy',
+    ])
+    .where('pullJar.studyId', '=', studyId)
+    .orderBy('pull.timeWeeks')
+    .orderBy('pullJar.asks', 'desc')
+    .orderBy('jar.code')
+    .execute()
+}
+export type PullJarRow = Awaited<ReturnType<typeof listStudyPullJars>>[number]
+
+export async function listStudySeries(db: Db, studyId: string) {
+  const rows = await db
+    .selectFrom('series')
+    .innerJoin('batch', 'batch.id', 'series.batchId')
+    .select([
+      'series.batchId',
+      'batch.code as batchCode',
+      'series.studyStationId',
+      'series.attribute',
+      'series.used',
+      'series.outSinceWeeks',
+      'series.leavesAtWeeks',
+      'series.latestValue',
+      'series.latestWeeks',
+    ])
+    .select((eb) => [
+      eb.ref('series.standing').$castTo<Standing>().as('standing'),
+      eb.ref('series.finding').$castTo<SeriesFinding>().as('finding'),
+    ])
+    .where('series.studyId', '=', studyId)
+    .orderBy('series.attribute')
+    .execute()
+  return rows
+}
+export type SeriesRow = Awaited<ReturnType<typeof listStudySeries>>[number]
+
+export async function listOpenFlags(db: Db, studyId: string) {
+  return db
+    .selectFrom('flag')
+    .select(['id', 'number', 'batchId', 'studyStationId', 'attribute', 'rule', 'level', 'atWeeks'])
+    .select(['sentence', 'state', 'raisedAt'])
+    .where('studyId', '=', studyId)
+    .where('state', '=', 'open')
+    .orderBy('number')
+    .execute()
+}
+export type OpenFlag = Awaited<ReturnType<typeof listOpenFlags>>[number]
+
+export type ReadingDetail = {
+  topMm?: number
+  bottomMm?: number
+  totalMm?: number
+  bleed?: number
+  torquePercent?: number
+  spindle?: string
+  rpm?: number
+  grossG?: number
+}
+
+/** What counts: readings that nothing superseded and that are not void. */
+export async function listCurrentReadings(db: Db, studyId: string) {
+  return db
+    .selectFrom('reading')
+    .leftJoin('pullJar', 'pullJar.id', 'reading.pullJarId')
+    .innerJoin('person', 'person.id', 'reading.recordedBy')
+    .select([
+      'reading.id',
+      'reading.batchId',
+      'reading.studyStationId',
+      'reading.attribute',
+      'reading.replicate',
+      'reading.value',
+      'reading.measuredAt',
+      'pullJar.pullId',
+      'reading.pullJarId',
+      'person.initials as readBy',
+    ])
+    .select((eb) => eb.ref('reading.detail').$castTo<ReadingDetail>().as('detail'))
+    .where('reading.studyId', '=', studyId)
+    .where('reading.isVoid', '=', false)
+    .where((eb) =>
+      eb.not(
+        eb.exists(
+          eb
+            .selectFrom('reading as newer')
+            .select('newer.id')
+            .whereRef('newer.supersedesId', '=', 'reading.id'),
+        ),
+      ),
+    )
+    .orderBy('reading.measuredAt')
+    .orderBy('reading.replicate')
+    .execute()
+}
+export type CurrentReading = Awaited<ReturnType<typeof listCurrentReadings>>[number]
+
+/** Mean temperature of each of the study's stations while it has run. */
+export async function listStationMeans(db: Db, studyId: string) {
+  return db
+    .selectFrom('studyStation')
+    .innerJoin('study', 'study.id', 'studyStation.studyId')
+    .innerJoin('stationTemperature', 'stationTemperature.stationId', 'studyStation.stationId')
+    .select('studyStation.id')
+    .select(sql<number>`avg(station_temperature.temperature_c)`.as('meanC'))
+    .where('studyStation.studyId', '=', studyId)
+    .whereRef('stationTemperature.measuredAt', '>=', 'study.startedAt')
+    .groupBy('studyStation.id')
+    .execute()
+}

@@ -1,0 +1,209 @@
+import { isBeyondBand } from '@/lib/science/band'
+import type { Band, SeriesFinding, Standing } from '@/lib/science/series'
+import { shownValue, shownWithUnit } from './words'
+
+export type Posture = 'upright' | 'leaning' | 'lying'
+export type CellState = 'read' | 'due' | 'planned' | 'missed' | 'resting' | 'broken'
+
+type PullJar = {
+  pullId: string
+  studyStationId: string
+  batchId: string
+  timeWeeks: number
+  label: string
+  dueOn: string
+  windowFrom: string
+  windowTo: string
+  asks: string
+  state: string
+  jarState: string
+  code: string
+}
+type Reading = {
+  id: string
+  batchId: string
+  studyStationId: string | null
+  pullId: string | null
+  attribute: string
+  value: number | null
+  readBy: string
+  detail: { topMm?: number; bottomMm?: number; totalMm?: number }
+}
+type Series = {
+  batchId: string
+  studyStationId: string
+  attribute: string
+  standing: Standing
+  finding: SeriesFinding
+}
+
+/** One place of the sheet: what was read of the jars of one pull, and what it means. */
+export type Cell = {
+  weeks: number
+  pullId: string | null
+  pullLabel: string
+  dueOn: string
+  state: CellState
+  /** What stands under the jar: the separation, or what is wanted. */
+  label: string
+  posture: Posture
+  topPercent: number | null
+  bottomPercent: number | null
+  separationPercent: number | null
+  code: string | null
+  readBy: string | null
+  values: CellValue[]
+}
+
+export type CellValue = {
+  attribute: string
+  text: string
+  isOut: boolean
+  band: Band
+  initial: number | null
+  last: number | null
+  now: number | null
+}
+
+const worse: Standing[] = ['untold', 'steady', 'leaning', 'out']
+
+/** The cells of one batch at one station, in time order; the initial is the first. */
+export function cellsOf(
+  batchId: string,
+  stationId: string,
+  input: { pullJars: PullJar[]; readings: Reading[]; series: Series[]; today: string; fillHeightMm: number },
+): Cell[] {
+  const own = { batchId, stationId, ...input }
+  const series = input.series.filter((one) => one.batchId === batchId && one.studyStationId === stationId)
+  const pulls = new Map<string, PullJar[]>()
+  for (const jar of input.pullJars) {
+    if (jar.batchId !== batchId || jar.studyStationId !== stationId) continue
+    pulls.set(jar.pullId, [...(pulls.get(jar.pullId) ?? []), jar])
+  }
+  const cells: Cell[] = [initialCell(own, series)]
+  for (const jars of pulls.values()) cells.push(pullCell(jars, own, series, cells.at(-1)!))
+  return cells
+}
+
+type Own = { batchId: string; stationId: string; readings: Reading[]; today: string; fillHeightMm: number }
+
+function initialCell(own: Own, series: Series[]): Cell {
+  return {
+    weeks: 0,
+    pullId: null,
+    pullLabel: 'initial',
+    dueOn: '',
+    state: 'read',
+    label: shownValue('separation', 0),
+    posture: 'upright',
+    topPercent: 0,
+    bottomPercent: 0,
+    separationPercent: 0,
+    code: null,
+    readBy: own.readings.find((r) => r.batchId === own.batchId && r.studyStationId === null)?.readBy ?? null,
+    values: series.map(({ attribute, finding }) => ({
+      ...valueOf(attribute, finding, finding.initial),
+      initial: finding.initial,
+      last: null,
+    })),
+  }
+}
+
+function pullCell(jars: PullJar[], own: Own, series: Series[], before: Cell): Cell {
+  const [first] = jars as [PullJar]
+  const readings = own.readings.filter(
+    (reading) => reading.pullId === first.pullId && reading.batchId === own.batchId,
+  )
+  const state = stateOf(jars, readings, own.today)
+  const watched = layersOf(readings, own.fillHeightMm)
+  const values = series.map(({ attribute, finding }) => {
+    const now = meanOf(readings, attribute)
+    const last = before.values.find((value) => value.attribute === attribute)
+    return {
+      ...valueOf(attribute, finding, now),
+      initial: finding.initial,
+      last: last?.now ?? last?.last ?? null,
+    }
+  })
+  return {
+    weeks: first.timeWeeks,
+    pullId: first.pullId,
+    pullLabel: first.label,
+    dueOn: first.dueOn,
+    state,
+    label: labelOf(state, watched?.separationPercent ?? null, first, own.today),
+    posture: postureOf(series, new Set(readings.map((reading) => reading.id))),
+    topPercent: watched?.topPercent ?? null,
+    bottomPercent: watched?.bottomPercent ?? null,
+    separationPercent: watched?.separationPercent ?? null,
+    code: first.code,
+    readBy: readings.at(-1)?.readBy ?? null,
+    values,
+  }
+}
+
+function stateOf(jars: PullJar[], readings: Reading[], today: string): CellState {
+  if (readings.length > 0 || jars.some((jar) => jar.state === 'done')) return 'read'
+  if (jars.some((jar) => jar.state === 'resting')) return 'resting'
+  if (jars.every((jar) => jar.state === 'missed')) {
+    return jars.every((jar) => jar.jarState === 'lost') ? 'broken' : 'missed'
+  }
+  return jars[0]!.windowFrom <= today ? 'due' : 'planned'
+}
+
+function labelOf(state: CellState, separation: number | null, pull: PullJar, today: string): string {
+  if (state === 'read') return separation === null ? '' : shownValue('separation', separation)
+  if (state === 'due') return pull.windowTo < today ? 'late' : 'due'
+  return state === 'planned' ? '' : state
+}
+
+/** Several jars of one pull: the worst counts, and its layers are the ones drawn. */
+function layersOf(readings: Reading[], fillHeightMm: number) {
+  const layers = readings
+    .filter((reading) => reading.attribute === 'separation' && reading.value !== null)
+    .map(({ value, detail }) => {
+      const total = detail.totalMm ?? fillHeightMm
+      const top = ((detail.topMm ?? 0) / total) * 100
+      const bottom = detail.bottomMm === undefined ? value! - top : (detail.bottomMm / total) * 100
+      return { topPercent: top, bottomPercent: Math.max(0, bottom), separationPercent: value! }
+    })
+  return layers.toSorted((a, b) => b.separationPercent - a.separationPercent)[0] ?? null
+}
+
+/** The worst of what the series were judged at on this pull. */
+function postureOf(series: Series[], readingIds: Set<string>): Posture {
+  const standings = series.flatMap(({ finding }) =>
+    finding.points
+      .filter((point) => point.readingIds.some((id) => readingIds.has(id)))
+      .map((point) => point.standing),
+  )
+  const worst = worstOf(standings)
+  return worst === 'out' ? 'lying' : worst === 'leaning' ? 'leaning' : 'upright'
+}
+
+/** Untold only where nothing else is told. */
+export function worstOf(standings: Standing[]): Standing {
+  return standings.reduce<Standing>(
+    (worst, one) => (worse.indexOf(one) > worse.indexOf(worst) ? one : worst),
+    'untold',
+  )
+}
+
+function valueOf(attribute: string, finding: SeriesFinding, now: number | null) {
+  return {
+    attribute,
+    text: now === null ? 'not read' : shownWithUnit(attribute, now),
+    isOut: now !== null && isBeyondBand(finding.band, now),
+    band: finding.band,
+    now,
+  }
+}
+
+function meanOf(readings: Reading[], attribute: string): number | null {
+  const values = readings
+    .filter((reading) => reading.attribute === attribute && reading.value !== null)
+    .map((reading) => reading.value!)
+  if (values.length === 0) return null
+  if (attribute === 'separation') return Math.max(...values)
+  return values.reduce((sum, value) => sum + value, 0) / values.length
+}
