@@ -1,0 +1,77 @@
+import { readFileSync } from 'node:fs'
+import type { Topic } from '../science/calc/topic'
+import { topics } from '../science/calc/topics'
+import { ScienceError } from '../science/guard'
+
+/** `npm run --silent calc -- TOPIC < input.json`: recheck any figure outside the application. */
+function main(args: string[]): void {
+  const [first, ...rest] = args.filter((arg) => arg !== '--help' && arg !== '-h')
+  const wantsHelp = args.includes('--help') || args.includes('-h')
+  if (first === undefined) {
+    if (wantsHelp) return print(overview())
+    return refuse(`topic: is missing; topics are ${names()}`)
+  }
+  const topic = topics.find((candidate) => candidate.name === first)
+  if (topic === undefined) return refuse(`topic: there is no "${first}"; topics are ${names()}`)
+  if (wantsHelp) return print(helpOf(topic))
+  if (rest.length > 0)
+    return refuse(`topic: one at a time, not also "${rest.join(' ')}"; input comes from stdin`)
+  answer(topic)
+}
+
+function answer(topic: Topic): void {
+  const text = readFileSync(0, 'utf8')
+  if (text.trim() === '') return refuse(`input: is empty; see calc ${topic.name} --help`)
+  let raw: unknown
+  try {
+    raw = JSON.parse(text)
+  } catch (error) {
+    return refuse(`input: is not valid JSON: ${error instanceof Error ? error.message : String(error)}`)
+  }
+  try {
+    print(JSON.stringify(topic.run(raw), null, 2))
+  } catch (error) {
+    if (error instanceof ScienceError) return refuse(error.message)
+    throw error
+  }
+}
+
+function overview(): string {
+  const width = Math.max(...topics.map((topic) => topic.name.length))
+  return [
+    'calc TOPIC < input.json: one JSON object in, one out. Bad input: exit 2 and one line that names the field.',
+    'calc TOPIC --help shows fields, units and a worked example.',
+    '',
+    ...topics.map((topic) => `  ${topic.name.padEnd(width)}  ${topic.says}`),
+  ].join('\n')
+}
+
+function helpOf(topic: Topic): string {
+  return [
+    `${topic.name}: ${topic.says}`,
+    '',
+    `Input:  ${topic.input}`,
+    `Output: ${topic.output}`,
+    topic.notes,
+    '',
+    'Example input:',
+    JSON.stringify(topic.example.input),
+    'gives:',
+    JSON.stringify(topic.example.output, null, 2),
+  ].join('\n')
+}
+
+function names(): string {
+  return topics.map((topic) => topic.name).join(', ')
+}
+
+function print(text: string): void {
+  process.stdout.write(`${text}\n`)
+}
+
+function refuse(line: string): void {
+  process.stderr.write(`${line.replace(/\s+/g, ' ')}\n`)
+  process.exitCode = 2
+}
+
+main(process.argv.slice(2))

@@ -1,0 +1,165 @@
+import { isBeyondBand, toleranceBand } from '../band'
+import { assessSeries } from '../drift'
+import { assertNumbers, assertSameLength, ScienceError } from '../guard'
+import { instrumentDay } from '../instrument-day'
+import { mean } from '../mean'
+import type { SeriesInput, SeriesReading, Tolerance } from '../series'
+import { examples } from './examples'
+import {
+  choice,
+  fieldsOf,
+  given,
+  has,
+  list,
+  number,
+  numbers,
+  object,
+  optionalNumber,
+  optionalReplicate,
+  replicates,
+  text,
+  type Fields,
+} from './read'
+import { topic } from './topic'
+
+export const driftTopic = topic({
+  name: 'drift',
+  says: 'Where a series stands: band, standing, trend, flags and doubts',
+  input:
+    '{times:[], values:[], initial?, tolerance, endTime, repeatabilitySd?:0, coldest?:{times, values}, detectionLimit?}',
+  output:
+    '{band:{lower, upper}, standing, used, slope, slopeP, leavesAt, leavesAtLow, leavesAtHigh, rules:[{rule, level, at, evidence}]}',
+  notes:
+    'Weeks. values are numbers or lists of replicates; a time given again is a repeat on a spare jar. Without initial the earliest entry is the initial; with it an entry at time 0 is left out. tolerance is {kind:"range", lower?, upper?}, {kind:"percent", below?, above?} or {kind:"shift", below?, above?}; one side left out means one-sided. slopeP is one-sided. With detectionLimit the series is separation: lists are jars, and the worst counts.',
+  example: examples.drift,
+  read: readSeries,
+  compute: (input) => {
+    const { band, standing, used, slope, slopeP, leavesAt, leavesAtLow, leavesAtHigh, rules } =
+      assessSeries(input)
+    return {
+      band,
+      standing,
+      used,
+      slope,
+      slopeP,
+      leavesAt,
+      leavesAtLow,
+      leavesAtHigh,
+      rules: rules.map(({ rule, level, at, evidence }) => ({ rule, level, at, evidence })),
+    }
+  },
+})
+
+export const instrumentDayTopic = topic({
+  name: 'instrument-day',
+  says: 'Whether one instrument read high or low everywhere on one day',
+  input: '{stations:[{name, temperatureC, times:[], values:[]}], at, repeatabilitySd}',
+  output: '{shift, direction:"high"|"low"|null, median, evidence:{residuals, beyondOne, coldestMean}}',
+  notes:
+    'Residuals and median in repeatability SDs; median is null with fewer than three stations that can be judged.',
+  example: examples['instrument-day'],
+  read: (raw) => {
+    const fields = fieldsOf(raw, '', ['stations', 'at', 'repeatabilitySd'])
+    return {
+      stations: list(fields, 'stations', (item, path) => {
+        const station = fieldsOf(item, path, ['name', 'temperatureC', 'times', 'values'])
+        return {
+          name: text(station, 'name'),
+          temperatureC: number(station, 'temperatureC'),
+          times: numbers(station, 'times'),
+          values: replicates(station, 'values').map(mean),
+        }
+      }),
+      at: number(fields, 'at'),
+      repeatabilitySd: number(fields, 'repeatabilitySd'),
+    }
+  },
+  compute: (input) => {
+    const { shift, direction, median, evidence } = instrumentDay(input)
+    return { shift, direction, median, evidence }
+  },
+})
+
+function readSeries(raw: unknown): SeriesInput {
+  const fields = fieldsOf(raw, '', [
+    'times',
+    'values',
+    'initial',
+    'tolerance',
+    'endTime',
+    'repeatabilitySd',
+    'coldest',
+    'detectionLimit',
+  ])
+  const times = numbers(fields, 'times')
+  const values = replicates(fields, 'values')
+  assertSameLength('times', times, 'values', values)
+  assertNumbers('times', times, 1)
+  const entries = times.map((time, i) => ({ time, values: values[i]! })).sort((a, b) => a.time - b.time)
+  const stated = optionalReplicate(fields, 'initial')
+  const first = entries[0]!
+  const initialTime = stated ? Math.min(0, first.time) : first.time
+  const initial = stated ?? first.values
+  const detectionLimit = optionalNumber(fields, 'detectionLimit')
+  const tolerance = readTolerance(object(fields, 'tolerance', ['kind', 'lower', 'upper', 'below', 'above']))
+  const repeatabilitySd = optionalNumber(fields, 'repeatabilitySd') ?? 0
+  if (repeatabilitySd < 0) throw new ScienceError('repeatabilitySd', 'must not be negative')
+  const start = mean(initial)
+  if (isBeyondBand(toleranceBand(tolerance, start), start)) {
+    throw new ScienceError('initial', `${start} lies outside its own band`)
+  }
+  return {
+    attribute: 'value',
+    tolerance,
+    endTime: number(fields, 'endTime'),
+    repeatabilitySd,
+    isSeparation: detectionLimit !== undefined,
+    ...given({ detectionLimit }),
+    initial,
+    initialTime,
+    readings: readingsOf(
+      stated ? entries.filter((e) => e.time !== 0) : entries.slice(1),
+      detectionLimit !== undefined,
+    ),
+    ...(has(fields, 'coldest') ? { coldest: readColdest(fields, initialTime) } : {}),
+  }
+}
+
+/** Entries of one time make one day: the first is the pull, what follows are its repeats. */
+function readingsOf(entries: { time: number; values: number[] }[], areJars: boolean): SeriesReading[] {
+  const firstAt = new Map<number, string>()
+  return entries.flatMap((entry, i) => {
+    const repeatOf = firstAt.get(entry.time)
+    if (repeatOf === undefined) firstAt.set(entry.time, `${i}.0`)
+    const jars = areJars ? entry.values.map((value) => [value]) : [entry.values]
+    return jars.map((values, jar) => ({
+      id: `${i}.${jar}`,
+      time: entry.time,
+      day: String(entry.time),
+      jar: `${i}.${jar}`,
+      values,
+      doubts: [],
+      ...(repeatOf === undefined ? {} : { isRepeatOf: repeatOf }),
+    }))
+  })
+}
+
+function readColdest(fields: Fields, initialTime: number) {
+  const coldest = object(fields, 'coldest', ['times', 'values'])
+  const times = numbers(coldest, 'times')
+  const values = replicates(coldest, 'values').map(mean)
+  assertSameLength('coldest.times', times, 'coldest.values', values)
+  const kept = times.map((_, i) => i).filter((i) => times[i] !== initialTime)
+  return { times: kept.map((i) => times[i]!), values: kept.map((i) => values[i]!) }
+}
+
+function readTolerance(fields: Fields): Tolerance {
+  const kind = choice(fields, 'kind', ['range', 'percent', 'shift'])
+  const wrong = kind === 'range' ? ['below', 'above'] : ['lower', 'upper']
+  for (const key of wrong) {
+    if (has(fields, key)) throw new ScienceError(`${fields.path}.${key}`, `does not belong to kind "${kind}"`)
+  }
+  return kind === 'range'
+    ? { kind, ...given({ lower: optionalNumber(fields, 'lower'), upper: optionalNumber(fields, 'upper') }) }
+    : { kind, ...given({ below: optionalNumber(fields, 'below'), above: optionalNumber(fields, 'above') }) }
+}

@@ -1,0 +1,121 @@
+import { extrapolationCap } from '../extrapolation-cap'
+import { outlier } from '../outlier'
+import { regression } from '../regression'
+import { shelfLife } from '../shelf-life'
+import {
+  choice,
+  fieldsOf,
+  flag,
+  given,
+  list,
+  number,
+  numbers,
+  object,
+  optionalFlag,
+  optionalNumber,
+  optionalNumbers,
+  text,
+} from './read'
+import { topic } from './topic'
+import { examples } from './examples'
+
+export const regressionTopic = topic({
+  name: 'regression',
+  says: 'Least-squares line of y on x, with predictions',
+  input: '{x:[], y:[], confidence?:0.95, at?:[x…]}',
+  output:
+    '{n, slope, intercept, slopeSe, interceptSe, residualSd, r2, df, slopeP, predictions:[{x, mean, meanLow, meanHigh, newLow, newHigh}]}',
+  notes:
+    'Needs three points. slopeP and all limits are two-sided; r2 is null where y is constant, slopeP without residual variation.',
+  example: examples.regression,
+  read: (raw) => {
+    const fields = fieldsOf(raw, '', ['x', 'y', 'confidence', 'at'])
+    return {
+      x: numbers(fields, 'x'),
+      y: numbers(fields, 'y'),
+      ...given({ confidence: optionalNumber(fields, 'confidence'), at: optionalNumbers(fields, 'at') }),
+    }
+  },
+  compute: regression,
+})
+
+export const shelfLifeTopic = topic({
+  name: 'shelf-life',
+  says: 'Supported time of one or more batches by ICH Q1E (2003)',
+  input:
+    '{batches:[{name, t:[], y:[]}], limit:{lower?, upper?}, direction:"decreasing"|"increasing"|"either", confidence?:0.95, poolingAlpha?:0.25, horizon}',
+  output:
+    '{model:"common line"|"common slope"|"separate lines", tests:[{name:"slopes"|"intercepts", F, df1, df2, p, pooled}], batches:[{name, slope, intercept, residualSd, df, crossing, side}], crossing, limitingBatch}',
+  notes:
+    't and horizon in one unit of time, each y one observation. Bound one-sided for decreasing (lower limit) and increasing (upper), two-sided for either. A crossing is null where the bound stays inside up to the horizon, 0 where it is outside at time 0; limitingBatch is null where all batches share one line.',
+  example: examples['shelf-life'],
+  read: (raw) => {
+    const fields = fieldsOf(raw, '', [
+      'batches',
+      'limit',
+      'direction',
+      'confidence',
+      'poolingAlpha',
+      'horizon',
+    ])
+    const limit = object(fields, 'limit', ['lower', 'upper'])
+    return {
+      batches: list(fields, 'batches', (item, path) => {
+        const batch = fieldsOf(item, path, ['name', 't', 'y'])
+        return { name: text(batch, 'name'), t: numbers(batch, 't'), y: numbers(batch, 'y') }
+      }),
+      limit: given({ lower: optionalNumber(limit, 'lower'), upper: optionalNumber(limit, 'upper') }),
+      direction: choice(fields, 'direction', ['decreasing', 'increasing', 'either']),
+      ...given({
+        confidence: optionalNumber(fields, 'confidence'),
+        poolingAlpha: optionalNumber(fields, 'poolingAlpha'),
+      }),
+      horizon: number(fields, 'horizon'),
+    }
+  },
+  compute: shelfLife,
+})
+
+export const extrapolationCapTopic = topic({
+  name: 'extrapolation-cap',
+  says: 'Longest time that months of long-term data may support: decision tree of ICH Q1E (2003)',
+  input:
+    '{dataMonths, storage:"room"|"refrigerated"|"frozen", acceleratedChange, intermediateChange?, variable, statistics}',
+  output: '{capMonths, rule}',
+  notes:
+    'The four answers are true or false. Never rounded; capMonths equals dataMonths where nothing may be extrapolated. The months are seen in quotation, the factors 2X and 1.5X from memory.',
+  example: examples['extrapolation-cap'],
+  read: (raw) => {
+    const fields = fieldsOf(raw, '', [
+      'dataMonths',
+      'storage',
+      'acceleratedChange',
+      'intermediateChange',
+      'variable',
+      'statistics',
+    ])
+    return {
+      dataMonths: number(fields, 'dataMonths'),
+      storage: choice(fields, 'storage', ['room', 'refrigerated', 'frozen']),
+      acceleratedChange: flag(fields, 'acceleratedChange'),
+      ...given({ intermediateChange: optionalFlag(fields, 'intermediateChange') }),
+      variable: flag(fields, 'variable'),
+      statistics: flag(fields, 'statistics'),
+    }
+  },
+  compute: extrapolationCap,
+})
+
+export const outlierTopic = topic({
+  name: 'outlier',
+  says: "Grubbs' test for one outlier, two-sided",
+  input: '{values:[], alpha?:0.05}',
+  output: '{g, critical, index, outlier}',
+  notes: 'Needs three values. index counts from 0; g is null where all values are equal.',
+  example: examples.outlier,
+  read: (raw) => {
+    const fields = fieldsOf(raw, '', ['values', 'alpha'])
+    return { values: numbers(fields, 'values'), ...given({ alpha: optionalNumber(fields, 'alpha') }) }
+  },
+  compute: outlier,
+})
