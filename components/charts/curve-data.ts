@@ -1,0 +1,49 @@
+import type { Standing } from '../marks/standing-shapes'
+
+export type CurvePoint = {
+  weeks: number
+  value: number
+  /** The reading as it is written, with its unit. */
+  text: string
+  /** Why the reading takes no part in the trend, where it does not. */
+  doubt?: string | null
+}
+
+/** A fitted mean with the limits of its confidence band at one time. */
+export type TrendPoint = { weeks: number; mean: number; low: number; high: number }
+
+export type CurveSeries = {
+  id: string
+  /** The station's number as written, or a batch's code where stations are not what differs. */
+  label: string
+  kind: 'temperature' | 'freeze-thaw' | 'batch'
+  temperatureC: number
+  standing: Standing
+  points: CurvePoint[]
+  /** In time order, from time zero to as far as the forecast is shown. */
+  trend?: TrendPoint[] | null
+  leaves?: { weeks: number; low: number | null; high: number | null } | null
+  /** Set back where another series is the one that is looked at. */
+  isQuiet?: boolean
+}
+
+export type CurveBand = {
+  lower?: number | null
+  upper?: number | null
+  /** `allowed up to 2.0 %`. */
+  text: string
+}
+
+export type CurveNote = { weeks: number; text: string }
+
+export type CurveInput = {
+  title: string
+  /** Lines of small print under the title: unit, method. */
+  unit: string[]
+  /** Decimals of the numbers on the axis. */
+  decimals: number
+  series: CurveSeries[]
+  band: CurveBand | null
+  /** Said beside the doubted readings of a week. */
+  notes?: CurveNote[]
+}
