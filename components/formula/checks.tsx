@@ -1,0 +1,26 @@
+import type { FormulaCheck } from '@/lib/formula/rules/checks'
+
+/** Questions with a reason each; what the formula does not answer itself is open, in the alarm colour. */
+export function Checks({ checks }: { checks: FormulaCheck[] }) {
+  return (
+    <ul className="flex flex-col gap-4">
+      {checks.map((check) => (
+        <li key={check.key} className="relative pl-5">
+          <svg
+            viewBox="0 0 20 12"
+            width="20"
+            height="12"
+            aria-hidden
+            className="absolute left-[-8px] top-1.5"
+          >
+            <path d="M8 6H20" stroke={check.isOpen ? 'var(--alarm)' : 'var(--ink)'} strokeWidth="1.5" />
+            <circle cx="6" cy="6" r="4.5" fill={check.isOpen ? 'var(--alarm)' : 'var(--ink)'} />
+          </svg>
+          <p className="font-650">{check.question}</p>
+          <p className={check.isOpen ? 'font-650 text-alarm' : ''}>{check.answer}</p>
+          <p className="text-14 text-soft">{check.reason}</p>
+        </li>
+      ))}
+    </ul>
+  )
+}

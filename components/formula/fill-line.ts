@@ -1,0 +1,66 @@
+import { newId } from '@/lib/db/id'
+import { ClientError, send } from '@/lib/http/fetcher'
+import { emptyLine } from '@/lib/formula/rules/arrange'
+import { moneyText, readDecimal, readScaled } from '@/lib/formula/rules/numbers'
+import type { PastedLine } from '@/lib/formula/rules/paste'
+import type { TypedLine } from '@/lib/formula/rules/typed'
+import type { EmulsionType } from '@/lib/formula/schema'
+import type { IngredientRow } from '@/lib/ingredient/queries'
+
+/** What is known of an ingredient fills the fields that were left empty, and its density always. */
+export function filledFrom(line: TypedLine, ingredient: IngredientRow): Partial<TypedLine> {
+  return {
+    ingredientId: ingredient.id,
+    inciName: ingredient.inciName,
+    function: line.function.trim() || ingredient.function,
+    density: ingredient.density.toFixed(3),
+    price:
+      line.price.trim() || (ingredient.priceCentsPerKg === null ? '' : moneyText(ingredient.priceCentsPerKg)),
+  }
+}
+
+export function linesFromPaste(
+  pasted: readonly PastedLine[],
+  known: readonly IngredientRow[],
+  phase: string,
+  lines: readonly TypedLine[],
+): TypedLine[] {
+  const hasRemainder = lines.some((line) => line.isRemainder)
+  const remainderAt = hasRemainder ? -1 : pasted.findIndex((line) => !line.percent)
+  return pasted.map((one, index) => {
+    const own = one.phase || phase
+    const isInternal = one.isInternal ?? lines.find((line) => line.phase === own)?.isInternal ?? own === 'B'
+    const typed: TypedLine = {
+      ...emptyLine(newId(), own, isInternal),
+      ...{ inciName: one.inciName, function: one.function, percent: one.percent },
+      ...{ density: one.density, price: one.price, isRemainder: index === remainderAt },
+    }
+    const ingredient = known.find((row) => row.inciName.toLowerCase() === one.inciName.toLowerCase())
+    if (!ingredient) return typed
+    const filled = filledFrom(typed, ingredient)
+    return { ...typed, ...filled, density: one.density || filled.density || '' }
+  })
+}
+
+/** Adds a line's ingredient to the lab's list; the sentence where that is not possible. */
+export async function addToIngredients(
+  line: TypedLine,
+  emulsionType: EmulsionType,
+): Promise<{ id: string } | string> {
+  const density = readDecimal(line.density)
+  if (density === null)
+    return `Give the density of ${line.inciName.trim()} first, then add it to the ingredients.`
+  try {
+    return await send<{ id: string }>('/api/ingredients', 'POST', {
+      id: newId(),
+      inciName: line.inciName,
+      function: line.function,
+      density,
+      isOilPhase: line.isInternal === (emulsionType === 'oil-in-water'),
+      priceCentsPerKg: line.price.trim() ? readScaled(line.price, 2) : null,
+    })
+  } catch (thrown) {
+    if (thrown instanceof ClientError) return thrown.sentence
+    throw thrown
+  }
+}

@@ -1,0 +1,34 @@
+'use client'
+
+import { Button } from '@/components/ui/button'
+import type { FormulaPage } from '@/lib/formula/queries/get-formula'
+import { percentText } from '@/lib/formula/rules/numbers'
+import type { FormulaTotals } from '@/lib/formula/rules/totals'
+import { MakeBatch } from './make-batch'
+import { NewVersion } from './new-version'
+import type { DraftHandle } from './use-draft'
+
+type Props = { formula: FormulaPage; handle: DraftHandle; totals: FormulaTotals; onSave: () => void }
+
+export function FormulaActs({ formula, handle, totals, onSave }: Props) {
+  const missing = totals.missingThousandths
+  const why = handle.isDirty
+    ? 'Save it first.'
+    : missing !== 0
+      ? `${percentText(Math.abs(missing))} % ${missing > 0 ? 'are missing' : 'too much'}.`
+      : undefined
+  const draft = formula.versions.find((version) => version.state === 'draft')
+  return (
+    <>
+      {formula.state === 'locked' && !draft ? (
+        <NewVersion formula={formula} next={(formula.versions.at(-1)?.number ?? 0) + 1} />
+      ) : null}
+      <MakeBatch formula={formula} why={why} />
+      {formula.state === 'draft' ? (
+        <Button kind="primary" busy={handle.isSaving} onClick={onSave}>
+          Save the draft
+        </Button>
+      ) : null}
+    </>
+  )
+}

@@ -1,0 +1,139 @@
+'use client'
+
+import Link from 'next/link'
+import { useMemo } from 'react'
+import { Heading } from '@/components/ui/heading'
+import type { FormulaPage } from '@/lib/formula/queries/get-formula'
+import { formulaChecks } from '@/lib/formula/rules/checks'
+import { formulaFinding } from '@/lib/formula/rules/finding'
+import { percentText } from '@/lib/formula/rules/numbers'
+import { formulaTotals, phaseTotals } from '@/lib/formula/rules/totals'
+import { readStep } from '@/lib/formula/rules/typed'
+import { toast } from '@/components/ui/toast'
+import { DraftBar } from './draft-bar'
+import { FormulaActs } from './formula-acts'
+import { LinesPart } from './lines-part'
+import { MadePart } from './made-part'
+import { ProcessPart } from './process-part'
+import { useDraft } from './use-draft'
+import { VersionsPart } from './versions-part'
+import type { FormulaPart } from './formula-view'
+
+type Props = {
+  formula: FormulaPage
+  part: FormulaPart
+  personId: string
+  mayWrite: boolean
+  isClient: boolean
+  onReload: () => void
+  onSaved: () => void
+}
+
+export function FormulaEditor({ formula, part, personId, mayWrite, isClient, onReload, onSaved }: Props) {
+  const handle = useDraft(formula, personId, isClient)
+  const { draft, amounts } = handle
+  const isOpen = mayWrite && formula.state === 'draft'
+  const totals = useMemo(() => formulaTotals(amounts), [amounts])
+  const steps = useMemo(() => draft.steps.flatMap((typed) => readStep(typed).step ?? []), [draft.steps])
+  const checks = formulaChecks(draft.emulsionType, amounts, steps)
+  const finding = formulaFinding(draft.emulsionType, totals, checks)
+  const before = formula.before
+    ? new Map(
+        formula.before.lines.map((line) => [
+          line.inciName.toLowerCase(),
+          percentText(line.percentThousandths),
+        ]),
+      )
+    : null
+
+  async function save() {
+    if (await handle.save()) {
+      toast(`Version ${formula.number} of ${formula.code} is saved.`)
+      onSaved()
+    }
+  }
+
+  return (
+    <div
+      onKeyDown={(event) => {
+        if (isOpen && event.key === 's' && (event.ctrlKey || event.metaKey)) {
+          event.preventDefault()
+          void save()
+        }
+      }}
+    >
+      <Heading
+        crumb={<Crumb formula={formula} name={draft.name} emulsionType={draft.emulsionType} />}
+        headline={
+          <>
+            <b>{finding.strong}</b>
+            {finding.rest}
+          </>
+        }
+        sentence={finding.sentence}
+        tabs={tabsOf(formula, part)}
+        tabsLabel="Parts of this formula"
+        acts={
+          mayWrite ? (
+            <FormulaActs formula={formula} handle={handle} totals={totals} onSave={() => void save()} />
+          ) : undefined
+        }
+      />
+      <DraftBar formula={formula} handle={handle} onReload={onReload} onSaved={onSaved} />
+      <div className="mt-6">
+        {part === 'lines' ? (
+          <LinesPart
+            formula={formula}
+            handle={handle}
+            isOpen={isOpen}
+            totals={totals}
+            phases={phaseTotals(amounts)}
+            checks={checks}
+            before={before}
+          />
+        ) : null}
+        {part === 'process' ? (
+          <ProcessPart handle={handle} isOpen={isOpen} steps={steps} checks={checks} />
+        ) : null}
+        {part === 'batches' ? <MadePart formula={formula} /> : null}
+        {part === 'versions' ? <VersionsPart formula={formula} /> : null}
+      </div>
+    </div>
+  )
+}
+
+function Crumb({
+  formula,
+  name,
+  emulsionType,
+}: {
+  formula: FormulaPage
+  name: string
+  emulsionType: string
+}) {
+  const made = formula.versions.filter((version) => version.batchCodes.length).at(-1)
+  return (
+    <>
+      <Link href="/formulas">Formulas</Link> · <b className="font-650 text-ink">{formula.code}</b>, {name},{' '}
+      {emulsionType}. Version {formula.number},{' '}
+      {formula.state === 'draft' ? `a draft by ${formula.createdBy}` : 'locked'}
+      {made ? `; version ${made.number} was made as batch ${made.batchCodes.at(-1)}` : ''}
+    </>
+  )
+}
+
+function tabsOf(formula: FormulaPage, part: FormulaPart) {
+  const version = formula.number === formula.versions.at(-1)?.number ? '' : `&version=${formula.number}`
+  const tab = (key: FormulaPart, label: string, count?: number) => ({
+    href: `/formulas/${formula.code}?part=${key}${version}`,
+    label,
+    isHere: key === part,
+    count,
+  })
+  return [
+    tab('lines', 'Lines'),
+    tab('process', 'Process', formula.steps.length),
+    tab('batches', 'Batches', formula.batches.length),
+    tab('versions', 'Versions', formula.versions.length),
+  ]
+}

@@ -1,0 +1,92 @@
+'use client'
+
+import { useState } from 'react'
+import { ErrorNote } from '@/components/ui/error-note'
+import { Field } from '@/components/ui/field'
+import { Select } from '@/components/ui/select'
+import type { FormulaPage } from '@/lib/formula/queries/get-formula'
+import type { FormulaCheck } from '@/lib/formula/rules/checks'
+import { emptyLine } from '@/lib/formula/rules/arrange'
+import type { FormulaTotals, PhaseTotal } from '@/lib/formula/rules/totals'
+import { emulsionTypes, type EmulsionType } from '@/lib/formula/schema'
+import { InsideDrawing } from './inside-drawing'
+import { LineSheet } from './line-sheet'
+import { ReadSheet } from './read-sheet'
+import { ApartJar } from './apart-jar'
+import { TotalRow } from './total-row'
+import type { DraftHandle } from './use-draft'
+
+type Props = {
+  formula: FormulaPage
+  handle: DraftHandle
+  isOpen: boolean
+  totals: FormulaTotals
+  phases: PhaseTotal[]
+  checks: FormulaCheck[]
+  before: Map<string, string> | null
+}
+
+/** The jar if it all came apart, the sheet, and what is inside: the formula at a glance. */
+export function LinesPart({ formula, handle, isOpen, totals, phases, checks, before }: Props) {
+  const { draft, amounts, problems, change } = handle
+  const [problem, setProblem] = useState('')
+  const foot = <TotalRow totals={totals} beforeNumber={before ? (formula.before?.number ?? null) : null} />
+  const lines = draft.lines.length ? draft.lines : [emptyLine(`${formula.versionId}-first`, 'A', false)]
+  return (
+    <div className="grid gap-x-10 gap-y-8 xl:grid-cols-[minmax(0,1fr)_600px]">
+      <div className="flex gap-4">
+        <ApartJar amounts={amounts} emulsionType={draft.emulsionType} />
+        <div className="min-w-0 flex-1">
+          {isOpen ? (
+            <>
+              <LineSheet
+                lines={lines}
+                emulsionType={draft.emulsionType}
+                phases={phases}
+                problems={problems}
+                before={before}
+                onLines={(next) => change({ lines: next })}
+                onProblem={setProblem}
+                foot={foot}
+              />
+              <div className="mt-3">
+                <ErrorNote error={problem || null} />
+              </div>
+              <Facts handle={handle} />
+            </>
+          ) : (
+            <ReadSheet lines={formula.lines} phases={phases} emulsionType={draft.emulsionType} foot={foot} />
+          )}
+        </div>
+      </div>
+      <InsideDrawing
+        totals={totals}
+        before={formula.before}
+        checks={checks}
+        emulsionType={draft.emulsionType}
+      />
+    </div>
+  )
+}
+
+function Facts({ handle }: { handle: DraftHandle }) {
+  const { draft, change, problems } = handle
+  return (
+    <div className="mt-6 grid gap-4 sm:grid-cols-[1fr_200px]">
+      <Field label="Name" value={draft.name} error={problems.name} onText={(name) => change({ name })} />
+      <Select
+        label="Emulsion type"
+        value={draft.emulsionType}
+        error={problems.emulsionType}
+        options={emulsionTypes.map((type) => ({ value: type, label: type }))}
+        onPick={(type) => change({ emulsionType: type as EmulsionType })}
+      />
+      <Field
+        label="Why this version"
+        value={draft.note}
+        wrap="sm:col-span-2"
+        onText={(note) => change({ note })}
+      />
+    </div>
+  )
+}
