@@ -1,4 +1,8 @@
 import {
+  converter,
+  formatHex,
+  type Color,
+  type Rgb,
   differenceCiede2000,
   filterDeficiencyDeuter,
   filterDeficiencyProt,
@@ -8,6 +12,7 @@ import {
 import { readFileSync } from 'node:fs'
 import { describe, expect, it } from 'vitest'
 
+const toRgb = converter('rgb')
 const css = readFileSync('app/globals.css', 'utf8')
 
 function tokensOf(theme: 'light' | 'dark'): Record<string, string> {
@@ -33,6 +38,10 @@ const edges: [string, string[]][] = [
   ['dot', ['cream']],
 ]
 
+function seenThrough(filter: (colour: Rgb) => Color) {
+  return (hex: string): string => formatHex(filter(toRgb(hex)!))
+}
+
 describe.each(['light', 'dark'] as const)('the %s theme', (theme) => {
   const token = tokensOf(theme)
 
@@ -53,10 +62,10 @@ describe.each(['light', 'dark'] as const)('the %s theme', (theme) => {
   )
 
   const eyes = [
-    ['every cone', (colour: string) => colour],
-    ['no long cone', filterDeficiencyProt(1)],
-    ['no middle cone', filterDeficiencyDeuter(1)],
-    ['no short cone', filterDeficiencyTrit(1)],
+    ['every cone', (hex: string) => hex],
+    ['no long cone', seenThrough(filterDeficiencyProt(1))],
+    ['no middle cone', seenThrough(filterDeficiencyDeuter(1))],
+    ['no short cone', seenThrough(filterDeficiencyTrit(1))],
   ] as const
 
   it.each(eyes)('water, oil and alarm are at least 20 apart for an eye with %s', (_, see) => {

@@ -1,0 +1,6 @@
+import type { ReactNode } from 'react'
+
+/** What can be opened without being signed in stands on the bare page. */
+export default function AuthLayout({ children }: { children: ReactNode }) {
+  return <div className="flex min-h-dvh flex-col">{children}</div>
+}

@@ -1,0 +1,94 @@
+'use client'
+
+import Link from 'next/link'
+import { DropdownMenu } from 'radix-ui'
+import { useState } from 'react'
+import type { Role } from '@/lib/auth/actor'
+import { send } from '@/lib/http/fetcher'
+import { sentenceOf } from '@/components/ui/error-note'
+import { toast } from '@/components/ui/toast'
+import { rolesInWords } from './role-words'
+import { themes, type Theme } from './theme'
+import { useTheme } from './use-theme'
+
+export type Who = { name: string; initials: string; email: string; roles: Role[] }
+
+const themeWords: Record<Theme, string> = { system: 'As the device', light: 'Bright', dark: 'Dim' }
+
+const item =
+  'flex min-h-[44px] cursor-pointer select-none items-center gap-2.5 px-4 outline-none data-[highlighted]:bg-typed data-[highlighted]:shadow-[inset_3px_0_0_var(--ink)]'
+
+export function PersonMenu({ who }: { who: Who }) {
+  const { theme, setTheme } = useTheme()
+  const [isLeaving, setLeaving] = useState(false)
+
+  async function signOut() {
+    setLeaving(true)
+    try {
+      await send('/api/session', 'DELETE', {})
+      // A whole new page: nothing of this person's data may stay in memory.
+      window.location.assign('/sign-in')
+    } catch (thrown) {
+      setLeaving(false)
+      toast(sentenceOf(thrown).sentence, { isAlarm: true })
+    }
+  }
+
+  return (
+    <DropdownMenu.Root modal={false}>
+      <DropdownMenu.Trigger
+        data-screen-only
+        className="relative shrink-0 whitespace-nowrap after:absolute after:-inset-x-2 after:-inset-y-3 after:content-[''] hover:underline hover:underline-offset-4"
+      >
+        <b>{who.initials}</b>, {rolesInWords(who.roles)}
+      </DropdownMenu.Trigger>
+      <DropdownMenu.Portal>
+        <DropdownMenu.Content
+          align="end"
+          sideOffset={12}
+          collisionPadding={8}
+          className="floats z-50 w-64 text-15"
+        >
+          <p className="border-b border-hair px-4 py-3">
+            <b className="block">{who.name}</b>
+            <span className="break-words text-soft">{who.email}</span>
+          </p>
+          <DropdownMenu.RadioGroup value={theme} onValueChange={(value) => setTheme(value as Theme)}>
+            <DropdownMenu.Label className="px-4 pt-2.5 text-13 text-soft">
+              Light of the page
+            </DropdownMenu.Label>
+            {themes.map((one) => (
+              <DropdownMenu.RadioItem
+                key={one}
+                value={one}
+                className={item}
+                onSelect={(event) => event.preventDefault()}
+              >
+                <span
+                  aria-hidden
+                  className="flex h-[18px] w-[18px] items-center justify-center rounded-full border-2 border-rule"
+                >
+                  <DropdownMenu.ItemIndicator className="h-2 w-2 rounded-full bg-ink" />
+                </span>
+                {themeWords[one]}
+              </DropdownMenu.RadioItem>
+            ))}
+          </DropdownMenu.RadioGroup>
+          <DropdownMenu.Item asChild className={`${item} border-t border-hair`}>
+            <Link href="/profile">Your profile</Link>
+          </DropdownMenu.Item>
+          <DropdownMenu.Item
+            className={item}
+            disabled={isLeaving}
+            onSelect={(event) => {
+              event.preventDefault()
+              void signOut()
+            }}
+          >
+            {isLeaving ? 'Signing out' : 'Sign out'}
+          </DropdownMenu.Item>
+        </DropdownMenu.Content>
+      </DropdownMenu.Portal>
+    </DropdownMenu.Root>
+  )
+}

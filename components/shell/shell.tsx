@@ -1,0 +1,122 @@
+'use client'
+
+import Link from 'next/link'
+import { usePathname } from 'next/navigation'
+import type { ReactNode } from 'react'
+import { Logo } from '@/components/marks/logo'
+import { Navigation } from './navigation'
+import { PersonMenu, type Who } from './person-menu'
+import type { Place } from './places'
+
+type Props = { who: Who; places: Place[]; labName: string; day: string; isDemo: boolean; children: ReactNode }
+
+/**
+ * What stands around every page of the notebook. The Bench has a density of its own: its first page keeps a
+ * slim line to leave by, and a jar's page draws its whole screen itself.
+ */
+export function Shell(props: Props) {
+  const path = usePathname()
+  const isBench = path === '/bench' || path.startsWith('/bench/')
+  if (isBench) return <BenchShell {...props} isWhole={path !== '/bench'} />
+  return <DeskShell {...props} path={path} />
+}
+
+function DeskShell({ who, places, labName, day, isDemo, path, children }: Props & { path: string }) {
+  const home = places.find((place) => place.href === '/studies') ?? places[0]
+  return (
+    <div className="flex min-h-dvh flex-col">
+      <SkipLink />
+      <header
+        data-screen-only
+        className="relative border-b border-ink px-4 sm:px-10 xl:h-[42px] print:border-0"
+      >
+        <div className="flex flex-wrap items-end justify-between gap-x-8 xl:flex-nowrap">
+          <Link
+            href={home?.href ?? '/'}
+            className="flex h-[42px] shrink-0 items-end gap-3 pb-0 -outline-offset-2"
+          >
+            <Logo className="translate-y-px" />
+            <span className="pb-[6px] text-19 font-720 tracking-[-0.01em]">Stillstand</span>
+          </Link>
+          <Navigation
+            places={places}
+            path={path}
+            className="order-last -mb-[3px] w-full xl:order-none xl:ml-4 xl:w-auto xl:flex-1"
+          />
+          <div className="pb-[9px] text-15">
+            <PersonMenu who={who} />
+          </div>
+        </div>
+      </header>
+      <main id="page" tabIndex={-1} className="flex-1 px-4 pb-16 outline-none sm:px-10">
+        {children}
+      </main>
+      <footer
+        data-screen-only
+        className="flex flex-wrap justify-between gap-x-6 border-t border-hair px-4 py-2.5 text-13 text-soft sm:px-10"
+      >
+        {isDemo ? (
+          <p>
+            <b className="text-ink">Demo.</b> Invented data: every person, batch and number here.
+          </p>
+        ) : (
+          <p>Stillstand supports judgement; it does not certify.</p>
+        )}
+        <p>
+          {labName}, {day}
+        </p>
+      </footer>
+    </div>
+  )
+}
+
+function BenchShell({ who, places, isWhole, children }: Props & { isWhole: boolean }) {
+  const desk = places.find((place) => place.href === '/studies')
+  return (
+    <div data-density="bench" className="min-h-dvh text-17">
+      <SkipLink />
+      {isWhole ? null : (
+        <header
+          data-screen-only
+          className="flex h-16 items-end justify-between gap-6 border-b border-ink px-4 sm:px-5"
+        >
+          <Link
+            href="/bench"
+            className="flex h-16 items-end gap-3 -outline-offset-2"
+            aria-label="Stillstand, Bench"
+          >
+            <Logo className="translate-y-px" />
+            <span className="pb-4 text-19 font-720">Bench</span>
+          </Link>
+          <span className="flex h-16 items-end gap-6">
+            {desk ? (
+              <Link
+                href={desk.href}
+                className="flex h-16 items-end pb-4 text-17 underline underline-offset-4"
+              >
+                Desk
+              </Link>
+            ) : null}
+            <span className="pb-4 text-17">
+              <PersonMenu who={who} />
+            </span>
+          </span>
+        </header>
+      )}
+      <main id="page" tabIndex={-1} className="outline-none">
+        {children}
+      </main>
+    </div>
+  )
+}
+
+function SkipLink() {
+  return (
+    <a
+      href="#page"
+      className="sr-only focus:not-sr-only focus:fixed focus:left-4 focus:top-2 focus:z-50 focus:rounded focus:bg-ink focus:px-4 focus:py-2.5 focus:text-onink"
+    >
+      To the page’s content
+    </a>
+  )
+}
