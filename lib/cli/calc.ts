@@ -1,18 +1,18 @@
 import { readFileSync } from 'node:fs'
 import type { Topic } from '../science/calc/topic'
-import { topics } from '../science/calc/topics'
+import { allTopics, findTopic, topicNames } from '../science/calc/topics'
 import { ScienceError } from '../science/guard'
 
 /** `npm run --silent calc -- TOPIC < input.json`: recheck any figure outside the application. */
-function main(args: string[]): void {
+async function main(args: string[]): Promise<void> {
   const [first, ...rest] = args.filter((arg) => arg !== '--help' && arg !== '-h')
   const wantsHelp = args.includes('--help') || args.includes('-h')
   if (first === undefined) {
-    if (wantsHelp) return print(overview())
-    return refuse(`topic: is missing; topics are ${names()}`)
+    if (wantsHelp) return print(overview(await allTopics()))
+    return refuse(`topic: is missing; topics are ${topicNames.join(', ')}`)
   }
-  const topic = topics.find((candidate) => candidate.name === first)
-  if (topic === undefined) return refuse(`topic: there is no "${first}"; topics are ${names()}`)
+  const topic = await findTopic(first)
+  if (topic === null) return refuse(`topic: there is no "${first}"; topics are ${topicNames.join(', ')}`)
   if (wantsHelp) return print(helpOf(topic))
   if (rest.length > 0)
     return refuse(`topic: one at a time, not also "${rest.join(' ')}"; input comes from stdin`)
@@ -36,7 +36,7 @@ function answer(topic: Topic): void {
   }
 }
 
-function overview(): string {
+function overview(topics: Topic[]): string {
   const width = Math.max(...topics.map((topic) => topic.name.length))
   return [
     'calc TOPIC < input.json: one JSON object in, one out. Bad input: exit 2 and one line that names the field.',
@@ -61,10 +61,6 @@ function helpOf(topic: Topic): string {
   ].join('\n')
 }
 
-function names(): string {
-  return topics.map((topic) => topic.name).join(', ')
-}
-
 function print(text: string): void {
   process.stdout.write(`${text}\n`)
 }
@@ -74,4 +70,4 @@ function refuse(line: string): void {
   process.exitCode = 2
 }
 
-main(process.argv.slice(2))
+await main(process.argv.slice(2))

@@ -1,23 +1,10 @@
 import { bufferPh } from '../buffer-ph'
-import { colour } from '../colour'
 import { ScienceError } from '../guard'
 import { phSlope } from '../ph-slope'
 import { separation } from '../separation'
-import { separationCurve } from '../separation-curve'
 import { viscosity } from '../viscosity'
 import { examples } from './examples'
-import {
-  choice,
-  fieldsOf,
-  given,
-  has,
-  list,
-  number,
-  numbers,
-  object,
-  optionalNumber,
-  type Fields,
-} from './read'
+import { choice, fieldsOf, given, has, list, number, optionalNumber } from './read'
 import { topic } from './topic'
 
 export const viscosityTopic = topic({
@@ -99,41 +86,3 @@ export const separationTopic = topic({
   },
   compute: separation,
 })
-
-export const separationCurveTopic = topic({
-  name: 'separation-curve',
-  says: 'When separation begins, how fast, and where it settles',
-  input: '{t:[], percent:[], detectPercent?:1}',
-  output: '{onset, rate, plateau, residualSd, model:"none"|"linear"|"first order after a lag"}',
-  notes:
-    'onset, rate and plateau are null where there is none. rate is in points per unit of t when separation begins; onset is the first lasting crossing of detectPercent, interpolated.',
-  example: examples['separation-curve'],
-  read: (raw) => {
-    const fields = fieldsOf(raw, '', ['t', 'percent', 'detectPercent'])
-    return {
-      t: numbers(fields, 't'),
-      percent: numbers(fields, 'percent'),
-      ...given({ detectPercent: optionalNumber(fields, 'detectPercent') }),
-    }
-  },
-  compute: separationCurve,
-})
-
-export const colourTopic = topic({
-  name: 'colour',
-  says: 'Colour difference CIEDE2000 and ΔE*ab',
-  input: '{reference:{L,a,b}, sample:{L,a,b}}',
-  output: '{deltaE00, deltaE76}',
-  notes: 'CIELAB coordinates.',
-  example: examples.colour,
-  read: (raw) => {
-    const fields = fieldsOf(raw, '', ['reference', 'sample'])
-    return { reference: lab(fields, 'reference'), sample: lab(fields, 'sample') }
-  },
-  compute: colour,
-})
-
-function lab(fields: Fields, key: string) {
-  const inner = object(fields, key, ['L', 'a', 'b'])
-  return { L: number(inner, 'L'), a: number(inner, 'a'), b: number(inner, 'b') }
-}
