@@ -1,12 +1,21 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { mkdtemp } from 'node:fs/promises'
+import { tmpdir } from 'node:os'
+import path from 'node:path'
 import pg from 'pg'
+import { POST as acceptInvitation } from '@/app/api/invitations/route'
 import { GET as getMails } from '@/app/api/mails/route'
 import { POST as inviteAgain } from '@/app/api/people/[id]/invitation/route'
 import { GET as getPerson, PATCH as patchPerson } from '@/app/api/people/[id]/route'
 import { GET as listPeople, POST as invite } from '@/app/api/people/route'
 import { POST as setUp } from '@/app/api/setup/route'
+import { systemActor } from '@/lib/auth/actor'
 import { newId } from '@/lib/db/id'
+import { transact } from '@/lib/db/transact'
+import { runJobs } from '@/lib/jobs/run'
 import { makeFirstCode } from '@/lib/lab/commands'
+import { startMailFake } from '@/lib/mail/fake'
+import { listMails } from '@/lib/mail/inbox'
 import { call } from '../support/call'
 import { testDatabase, type Signed, type TestDatabase } from '../support/database'
 
@@ -146,5 +155,40 @@ describe('people', () => {
 
   it('there is no mail page outside the demo', async () => {
     expect((await call(getMails, { cookie: manager.cookie })).status).toBe(404)
+  })
+})
+
+describe('mail', () => {
+  it('carries a link that the worker makes when it sends, and only its hash is kept', async () => {
+    process.env['STILLSTAND_FILES'] = path.join(await mkdtemp(path.join(tmpdir(), 'stillstand-')), 'files')
+    process.env['STILLSTAND_DEMO'] = 'on'
+    await transact(t.owner, systemActor(), {}, (trx) =>
+      trx.updateTable('lab').set({ demoFilledAt: new Date().toISOString() }).execute(),
+    )
+    const fake = await startMailFake()
+    const jobs = await runJobs()
+    try {
+      const id = newId()
+      const person = { id, email: 'zoe@lab.example', name: 'Zoë Ünver', initials: 'ZÜ', roles: ['qa'] }
+      expect((await call(invite, { cookie: manager.cookie, body: person })).status).toBe(200)
+      const mail = await expect
+        .poll(async () => (await listMails(t.db)).find((kept) => kept.to.includes(person.email)), {
+          timeout: 20_000,
+        })
+        .toBeTruthy()
+        .then(async () => (await listMails(t.db)).find((kept) => kept.to.includes(person.email))!)
+      expect(mail.subject).toContain('New lab')
+      expect(mail.text).toContain('Zoë Ünver')
+      const secret = /\/invitation\/([\w-]+)/.exec(mail.text)![1]!
+      const kept = await t.owner.selectFrom('token').select('hash').where('personId', '=', id).execute()
+      expect(kept).toHaveLength(1)
+      expect(kept[0]!.hash).not.toContain(secret)
+      const entered = await call(acceptInvitation, { body: { token: secret, password: answers.password } })
+      expect(entered.status).toBe(200)
+      expect((await call(getMails, { cookie: manager.cookie })).body[0].text).toContain(secret)
+    } finally {
+      await jobs.stop()
+      await fake.close()
+    }
   })
 })

@@ -8,6 +8,8 @@ import { GET as getTrail } from '@/app/api/trail/route'
 import { systemActor } from '@/lib/auth/actor'
 import { newId } from '@/lib/db/id'
 import { transact } from '@/lib/db/transact'
+import { trailRows } from '@/lib/cli/checks/trail-rows'
+import { trailSeal } from '@/lib/cli/checks/trail-seal'
 import { call } from '../support/call'
 import { testDatabase, type Signed, type TestDatabase } from '../support/database'
 
@@ -210,4 +212,85 @@ describe('who reads the trail', () => {
     )
     expect((await call(getTrail, { cookie: client.cookie })).status).toBe(403)
   })
+})
+
+describe('R05: alteration below the application is found', () => {
+  const seal = () => sql`select seal_trail()`.execute(t.db)
+  const findings = async () => [...(await trailSeal.run(t.db)), ...(await trailRows.run(t.db))]
+  /** As the server's administrator with the triggers off: whoever can do this can do anything but stay unseen. */
+  const below = async (statement: string, ...values: unknown[]) => {
+    const admin = new pg.Client({ connectionString: t.url('stillstand_admin') })
+    await admin.connect()
+    try {
+      await admin.query("set session_replication_role = 'replica'")
+      await admin.query(statement, values)
+    } finally {
+      await admin.end()
+    }
+  }
+
+  it('nothing is found in a record that was left alone', async () => {
+    await seal()
+    expect(await findings()).toEqual([])
+  })
+
+  it('sealing again adds only what is new', async () => {
+    const { rows } = await sql<{ sealed: number }>`select seal_trail() as sealed`.execute(t.db)
+    expect(rows[0]!.sealed).toBe(0)
+    await call(postClient, { cookie: manager.cookie, body: { id: newId(), name: 'One more' } })
+    const next = await sql<{ sealed: number }>`select seal_trail() as sealed`.execute(t.db)
+    expect(next.rows[0]!.sealed).toBe(1)
+    expect(await findings()).toEqual([])
+  })
+
+  it('a row altered, deleted or put in without the trail is named', async () => {
+    const ids = [newId(), newId(), newId()]
+    for (const id of ids.slice(0, 2))
+      await call(postClient, { cookie: manager.cookie, body: { id, name: `Client ${id}` } })
+    await below('update client set name = $1 where id = $2', 'Altered', ids[0])
+    await below('delete from client where id = $1', ids[1])
+    await below('insert into client (id, name) values ($1, $2)', ids[2], 'Smuggled')
+    expect((await findings()).sort()).toEqual(
+      [
+        `Row ${ids[0]} of client was changed without the trail knowing.`,
+        `Row ${ids[1]} of client was deleted without the trail knowing.`,
+        `Row ${ids[2]} of client was put in without the trail knowing.`,
+      ].sort(),
+    )
+  })
+
+  it('a trail row altered, deleted, swapped or put in between is named, and only it', async () => {
+    for (const name of ['a', 'b', 'c', 'd', 'e', 'f'])
+      await call(postClient, { cookie: manager.cookie, body: { id: newId(), name: `Trail ${name}` } })
+    await seal()
+    const rows = await t.owner.selectFrom('trail').select('id').orderBy('id', 'desc').limit(6).execute()
+    const [gone, altered, one, other] = rows.map((row) => row.id) as [number, number, number, number]
+    await below("update trail set reason = 'made up' where id = $1", altered)
+    await below('delete from trail where id = $1', gone)
+    await below(
+      `update trail as here set after = there.after, row_id = there.row_id from trail as there
+        where (here.id, there.id) in (($1, $2), ($2, $1))`,
+      one,
+      other,
+    )
+    const found = await trailSeal.run(t.db)
+    expect(
+      found
+        .filter((sentence) => sentence.includes('changed'))
+        .map(numberIn)
+        .sort(),
+    ).toEqual([altered, one, other].sort())
+    expect(found.filter((sentence) => sentence.includes('deleted')).map(numberIn)).toEqual([gone])
+    expect(found).toHaveLength(4)
+    await below(
+      `insert into trail overriding system value
+        select $1::bigint as id, at, actor_id, table_name, row_id, operation, event, before, after, reason, request_id, is_shifted
+        from trail where id = $2`,
+      -5,
+      altered,
+    )
+    expect(await trailSeal.run(t.db)).toContain('Trail row -5 was put in after its place had been sealed.')
+  })
+
+  const numberIn = (sentence: string) => Number(/row (-?\d+)/.exec(sentence)![1])
 })
