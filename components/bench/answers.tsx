@@ -1,0 +1,153 @@
+'use client'
+
+import { useState } from 'react'
+import type { BenchPerson } from '@/components/bench/bench-app'
+import type { DraftEntry } from '@/components/bench/draft'
+import { Button } from '@/components/ui/button'
+import { Dialog } from '@/components/ui/dialog'
+import { Field } from '@/components/ui/field'
+import type { BenchJarPage } from '@/lib/bench/queries/jar'
+import type { ClientError } from '@/lib/http/fetcher'
+import { attributes, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { figure } from '@/lib/report/rules'
+
+/** What the server gives when someone else has read the jar: lib/pull/rules/refusals.ts. */
+export type AlreadyRead = {
+  version: number
+  by: { name: string; initials: string }
+  at: string
+  readings: {
+    id: string
+    attribute: AttributeKey
+    replicate: number
+    value: number | null
+    word: string | null
+    typed: string
+  }[]
+  comparisons: { attribute: AttributeKey; difference: number; scatter: number; agree: boolean }[]
+}
+
+type AskProps = { refusal: ClientError; onConfirm: () => void; onAgain: () => void; isBusy: boolean }
+
+/** A number that may be, but is unlikely: it is taken as a doubt, or typed again. */
+export function AskAgain({ refusal, onConfirm, onAgain, isBusy }: AskProps) {
+  const sentences = [...new Set(Object.values(refusal.fields))]
+  return (
+    <Dialog
+      isOpen
+      onClose={onAgain}
+      title="Is it so?"
+      density="bench"
+      acts={
+        <>
+          <Button density="bench" onClick={onAgain}>
+            Type again
+          </Button>
+          <Button density="bench" kind="primary" busy={isBusy} onClick={onConfirm}>
+            It is so, keep it
+          </Button>
+        </>
+      }
+    >
+      {(sentences.length > 0 ? sentences : [refusal.sentence]).map((sentence) => (
+        <p key={sentence} className="text-20">
+          {sentence}
+        </p>
+      ))}
+      <p className="text-17 text-soft">
+        An unlikely value is kept as a doubt: it takes no part until a repeat settles it or someone sets the
+        doubt aside.
+      </p>
+    </Dialog>
+  )
+}
+
+type TwoProps = {
+  jar: BenchJarPage
+  person: BenchPerson
+  theirs: AlreadyRead
+  mine: DraftEntry[]
+  isBusy: boolean
+  onDecide: (resolution: { count: 'mine' | 'theirs'; reason: string }) => void
+  onClose: () => void
+}
+
+/** Two people, one jar: both readings stay on record, and one says which counts, and why. */
+export function TwoPeople({ jar, person, theirs, mine, isBusy, onDecide, onClose }: TwoProps) {
+  const [count, setCount] = useState<'mine' | 'theirs'>('mine')
+  const [reason, setReason] = useState('')
+  const apart = theirs.comparisons[0]
+  return (
+    <Dialog
+      isOpen
+      onClose={onClose}
+      width={680}
+      title={`${theirs.by.initials} has also read ${jar.name}`}
+      sentence="Both stay on record; you say which one counts, and why."
+      density="bench"
+      acts={
+        <>
+          <Button density="bench" onClick={onClose}>
+            Decide later
+          </Button>
+          <Button
+            density="bench"
+            kind="primary"
+            busy={isBusy}
+            why={reason.trim() === '' ? 'Say why first.' : undefined}
+            onClick={() => onDecide({ count, reason })}
+          >
+            {count === 'mine' ? 'Count mine, keep both' : `Count ${theirs.by.initials}, keep both`}
+          </Button>
+        </>
+      }
+    >
+      <div className="grid gap-3 sm:grid-cols-2" role="radiogroup" aria-label="Which counts">
+        <Side
+          name={`Yours, ${person.initials}`}
+          lines={mine.map((e) => `${attributes[e.attribute].label} ${e.typed}`)}
+          isPicked={count === 'mine'}
+          onPick={() => setCount('mine')}
+        />
+        <Side
+          name={theirs.by.name}
+          lines={theirs.readings.map(
+            (r) =>
+              `${attributes[r.attribute].label} ${r.word ?? (r.value === null ? r.typed : figure(r.attribute, r.value))}`,
+          )}
+          isPicked={count === 'theirs'}
+          onPick={() => setCount('theirs')}
+        />
+      </div>
+      {apart ? (
+        <p className="font-650">
+          {figure(apart.attribute, apart.difference)} apart in {attributes[apart.attribute].label}. A jar’s
+          own scatter is {figure(apart.attribute, apart.scatter)}:{' '}
+          {apart.agree ? 'they agree.' : 'they do not agree.'}
+        </p>
+      ) : null}
+      <Field label="Reason" density="bench" value={reason} onText={setReason} />
+    </Dialog>
+  )
+}
+
+type SideProps = { name: string; lines: string[]; isPicked: boolean; onPick: () => void }
+
+function Side({ name, lines, isPicked, onPick }: SideProps) {
+  return (
+    <button
+      type="button"
+      role="radio"
+      aria-checked={isPicked}
+      onClick={onPick}
+      className={`min-h-16 rounded p-3 text-left ${isPicked ? 'border-[2.5px] border-ink bg-typed' : 'border-2 border-rule bg-paper'}`}
+    >
+      <b className="text-20">{name}</b>
+      {lines.map((line, i) => (
+        <span key={i} className="block text-20">
+          {line}
+        </span>
+      ))}
+    </button>
+  )
+}

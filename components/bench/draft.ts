@@ -1,0 +1,134 @@
+import type { BenchField } from '@/lib/bench/rules'
+import { newId } from '@/lib/db/id'
+import type { EntryDetail } from '@/lib/reading/schema/entry'
+import { readTyped } from '@/lib/reading/schema/typed'
+
+/** One input of the jar's screen. Layers have two; a replicate is an input of its own. */
+export type Slot = {
+  key: string
+  kind: 'number' | 'torque' | 'gross' | 'layer' | 'word'
+  field: BenchField
+  replicate: number
+  part?: 'top' | 'bottom'
+}
+
+export type Draft = {
+  texts: Record<string, string>
+  /** Client-made ids of the readings, so that sending again saves once. */
+  ids: Record<string, string>
+  confirmed: string[]
+  instruments: Record<string, string>
+  note: string
+  begunAt: string
+}
+
+export function emptyDraft(now: string): Draft {
+  return { texts: {}, ids: {}, confirmed: [], instruments: {}, note: '', begunAt: now }
+}
+
+export function slotsOf(fields: BenchField[], hasMass: boolean): Slot[] {
+  return fields.flatMap((field): Slot[] => {
+    const each = Array.from({ length: field.replicates }, (_, i) => i + 1)
+    if (field.kind === 'layers')
+      return [
+        { key: `${field.attribute}.top`, kind: 'layer', field, replicate: 1, part: 'top' },
+        { key: `${field.attribute}.bottom`, kind: 'layer', field, replicate: 1, part: 'bottom' },
+      ]
+    const kind =
+      field.kind === 'word'
+        ? 'word'
+        : field.kind === 'torque' && field.viscosity
+          ? 'torque'
+          : field.attribute === 'mass' && hasMass
+            ? 'gross'
+            : 'number'
+    return each.map((replicate) => ({ key: `${field.attribute}.${replicate}`, kind, field, replicate }))
+  })
+}
+
+export type DraftEntry = {
+  id: string
+  attribute: BenchField['attribute']
+  replicate: number
+  typed: string
+  detail: EntryDetail
+  instrumentId?: string
+  isConfirmed: boolean
+}
+
+/** What would be sent: one entry for each field that has something typed. Both layers make one entry. */
+export function entriesOf(slots: Slot[], draft: Draft, fillHeightMm: number | null): DraftEntry[] {
+  const seen = new Set<string>()
+  return slots.flatMap((slot): DraftEntry[] => {
+    const id = `${slot.field.attribute}.${slot.replicate}`
+    if (seen.has(id)) return []
+    seen.add(id)
+    const text = (key: string) => (draft.texts[key] ?? '').trim()
+    const base = {
+      id: draft.ids[id] ?? newId(),
+      attribute: slot.field.attribute,
+      replicate: slot.replicate,
+      isConfirmed: draft.confirmed.includes(id),
+      ...(draft.instruments[id] ? { instrumentId: draft.instruments[id] } : {}),
+    }
+    if (slot.kind === 'layer') {
+      const [top, bottom] = [text(`${slot.field.attribute}.top`), text(`${slot.field.attribute}.bottom`)]
+      if (top === '' && bottom === '') return []
+      const height = fillHeightMm === null ? {} : { totalMm: fillHeightMm }
+      const detail = {
+        topMm: readTyped(top || '0') ?? NaN,
+        bottomMm: readTyped(bottom || '0') ?? NaN,
+        ...height,
+      }
+      return [{ ...base, typed: `${top || '0'} mm top, ${bottom || '0'} mm below`, detail }]
+    }
+    const typed = text(slot.key)
+    if (typed === '') return []
+    if (slot.kind === 'word') return [{ ...base, typed, detail: { word: typed } }]
+    const value = readTyped(typed) ?? NaN
+    if (slot.kind === 'torque')
+      return [
+        {
+          ...base,
+          typed,
+          detail: {
+            torquePercent: value,
+            spindle: slot.field.viscosity?.spindle,
+            rpm: slot.field.viscosity?.rpm,
+          },
+        },
+      ]
+    if (slot.kind === 'gross') return [{ ...base, typed, detail: { grossG: value } }]
+    return [{ ...base, typed, detail: {} }]
+  })
+}
+
+/** Every entry gets its id once, when it is first typed. */
+export function withIds(draft: Draft, slots: Slot[]): Draft {
+  const ids = { ...draft.ids }
+  for (const slot of slots) {
+    const id = `${slot.field.attribute}.${slot.replicate}`
+    ids[id] ??= newId()
+  }
+  return { ...draft, ids }
+}
+
+const storeKey = (personId: string, pullJarId: string) => `stillstand.draft.${personId}.${pullJarId}`
+
+export function readDraft(personId: string, pullJarId: string): Draft | null {
+  try {
+    const text = localStorage.getItem(storeKey(personId, pullJarId))
+    return text ? (JSON.parse(text) as Draft) : null
+  } catch {
+    return null
+  }
+}
+
+export function keepDraft(personId: string, pullJarId: string, draft: Draft | null): void {
+  try {
+    if (draft) localStorage.setItem(storeKey(personId, pullJarId), JSON.stringify(draft))
+    else localStorage.removeItem(storeKey(personId, pullJarId))
+  } catch {
+    // A full or forbidden store loses the draft at a reload, not what is on the screen.
+  }
+}

@@ -1,0 +1,33 @@
+import { Tray, type Outbox } from '@/components/bench/tray'
+import { ThemeButton } from '@/components/shell/theme-button'
+import type { BenchJarPage } from '@/lib/bench/queries/jar'
+
+export function JarHead({ jar, outbox, onWalk }: { jar: BenchJarPage; outbox: Outbox; onWalk: () => void }) {
+  return (
+    <header className="flex items-center gap-3 px-4 py-3 sm:gap-5 sm:px-5 sm:py-4">
+      <button
+        type="button"
+        aria-label="Back to the walk"
+        data-kind="secondary"
+        className="btn aspect-square shrink-0 p-0"
+        onClick={onWalk}
+      >
+        <svg viewBox="0 0 20 36" width="20" height="36" aria-hidden>
+          <path d="M16 3 3 18 16 33" fill="none" stroke="currentColor" strokeWidth="4.5" />
+        </svg>
+      </button>
+      <div className="min-w-0 flex-1">
+        <h1 className="truncate font-mono text-30 font-700 leading-none sm:text-48">{jar.name}</h1>
+        <p className="truncate text-17 sm:mt-1 sm:text-18">
+          {jar.batch.code}, {jar.batch.formulaName}. {capital(jar.label)}
+        </p>
+      </div>
+      <Tray outbox={outbox} />
+      <ThemeButton className="shrink-0" />
+    </header>
+  )
+}
+
+function capital(text: string): string {
+  return text.charAt(0).toUpperCase() + text.slice(1)
+}

@@ -1,0 +1,81 @@
+import { TinyJar } from '@/components/bench/tray'
+import type { BenchJar } from '@/lib/bench/queries/today'
+import { dayText } from '@/lib/report/rules'
+
+const asks = { watch: 'look, stays sealed', measuring: 'opened once', repeat: 'repeat on a spare' }
+
+/** One jar of the walk: its glyph, its code as the label says it, where it stands and until when. */
+export function JarRow({
+  jar,
+  isKept,
+  onOpen,
+}: {
+  jar: BenchJar
+  isKept: boolean
+  onOpen: (code: string) => void
+}) {
+  const isOpen = !isKept && (jar.state === 'due' || jar.state === 'resting')
+  const place = jar.shelf === null ? '' : `shelf ${jar.shelf}, place ${jar.place}`
+  return (
+    <li>
+      <button
+        type="button"
+        onClick={() => onOpen(jar.code)}
+        className={`flex min-h-16 w-full items-center gap-3 rounded px-3 py-2 text-left ${
+          jar.openedBy && isOpen
+            ? 'border-[2.5px] border-ink bg-typed'
+            : isOpen
+              ? 'border-2 border-rule bg-paper'
+              : 'border-2 border-transparent'
+        }`}
+      >
+        <span className="flex w-11 shrink-0 justify-center" aria-hidden>
+          <TinyJar
+            standing={jar.standing}
+            layers={jar.layers}
+            state={isKept ? 'done' : jar.state}
+            height={40}
+          />
+        </span>
+        <span className="shrink-0 font-mono text-26 font-700 leading-none sm:text-30">{jar.code}</span>
+        <span className="min-w-0 flex-1 leading-snug">
+          <span className="flex flex-wrap justify-between gap-x-3">
+            <b className="truncate">
+              {jar.batch.code}, {jar.label}
+            </b>
+            <span
+              className={jar.isOverdue ? 'font-650 text-alarm' : jar.isLastDay ? 'font-700' : 'text-soft'}
+            >
+              {windowText(jar, isKept)}
+            </span>
+          </span>
+          <span className="block truncate text-soft">
+            {jar.openedBy && isOpen
+              ? `open: ${jar.openedBy.initials}`
+              : [asks[jar.asks], place].filter(Boolean).join(', ')}
+          </span>
+        </span>
+        {isOpen ? <Chevron /> : null}
+      </button>
+    </li>
+  )
+}
+
+function windowText(jar: BenchJar, isKept: boolean): string {
+  if (isKept) return 'kept on this tablet'
+  if (jar.state === 'missed') return 'not read'
+  if (jar.state === 'done') return `read${jar.closedBy ? ` by ${jar.closedBy.initials}` : ''}`
+  if (jar.isReady) return 'rested, ready'
+  if (jar.state === 'resting' && jar.restUntil)
+    return `rests until ${new Date(jar.restUntil).toLocaleTimeString('en-GB', { hour: '2-digit', minute: '2-digit' })}`
+  if (jar.isOverdue) return `was due by ${dayText(jar.windowTo)}`
+  return jar.isLastDay ? 'today only' : `by ${dayText(jar.windowTo)}`
+}
+
+function Chevron() {
+  return (
+    <svg viewBox="0 0 14 24" width="14" height="24" aria-hidden className="shrink-0">
+      <path d="M2 2 12 12 2 22" fill="none" stroke="currentColor" strokeWidth="3.5" />
+    </svg>
+  )
+}

@@ -1,0 +1,395 @@
+'use client'
+
+import { useEffect, useMemo, useState } from 'react'
+import useSWR from 'swr'
+import { AskAgain, TwoPeople, type AlreadyRead } from '@/components/bench/answers'
+import type { BenchPerson } from '@/components/bench/bench-app'
+import { entriesOf, slotsOf, withIds } from '@/components/bench/draft'
+import { DonePanel } from '@/components/bench/done-panel'
+import { JarHead } from '@/components/bench/jar-head'
+import { LayersPanel } from '@/components/bench/layers-panel'
+import { MissDialog } from '@/components/bench/miss-dialog'
+import { OverviewPanel } from '@/components/bench/overview-panel'
+import { NotePanel, PhotoPanel, WordPanel } from '@/components/bench/other-panels'
+import { dropKept, isPassing, keep } from '@/components/bench/outbox'
+import { RestPanel } from '@/components/bench/rest-panel'
+import { SlotTabs, type TabState } from '@/components/bench/slot-tabs'
+import type { Outbox } from '@/components/bench/tray'
+import { useDraft } from '@/components/bench/use-draft'
+import { ValuePanel } from '@/components/bench/value-panel'
+import { verdictOf } from '@/components/bench/verdict'
+import { WalkStrip } from '@/components/bench/walk-strip'
+import { Button } from '@/components/ui/button'
+import { ErrorNote } from '@/components/ui/error-note'
+import { toast } from '@/components/ui/toast'
+import type { BenchJarPage } from '@/lib/bench/queries/jar'
+import type { Bench } from '@/lib/bench/queries/today'
+import { benchKeys } from '@/lib/bench/schema'
+import { ClientError, fetcher, send } from '@/lib/http/fetcher'
+import { pullKeys } from '@/lib/pull/schema'
+
+type Props = {
+  code: string
+  bench: Bench
+  person: BenchPerson
+  outbox: Outbox
+  onOpen: (code: string) => void
+  onWalk: () => void
+  onChange: () => void
+}
+
+/** One jar: what is asked of it, typed by gloved hands, judged while it is typed, kept with one press. */
+export function JarScreen({ code, bench, person, outbox, onOpen, onWalk, onChange }: Props) {
+  const { data: jar, error: unread, mutate } = useSWR<BenchJarPage>(benchKeys.jar(code), fetcher)
+  if (!jar)
+    return (
+      <div className="mx-auto flex max-w-[820px] flex-col gap-5 p-5">
+        {unread ? <ErrorNote error={unread} /> : <p role="status">The jar is being looked up.</p>}
+        <Button density="bench" onClick={onWalk}>
+          Back to the walk
+        </Button>
+      </div>
+    )
+  return (
+    <OpenJar
+      key={jar.pullJarId}
+      {...{ jar, bench, person, outbox, onOpen, onWalk }}
+      onChange={() => {
+        void mutate()
+        onChange()
+      }}
+    />
+  )
+}
+
+type OpenProps = Omit<Props, 'code'> & { jar: BenchJarPage }
+
+function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }: OpenProps) {
+  const slots = useMemo(
+    () => slotsOf(jar.fields, jar.tareG !== null && jar.grossG !== null),
+    [jar.fields, jar.tareG, jar.grossG],
+  )
+  const [draft, setDraft, forget] = useDraft(person.personId, jar.pullJarId)
+  const [at, setAt] = useState<string>(slots[0]?.key ?? 'note')
+  const [error, setError] = useState<unknown>(null)
+  const [asked, setAsked] = useState<ClientError | null>(null)
+  const [twice, setTwice] = useState<AlreadyRead | null>(null)
+  const [isMissing, setMissing] = useState(false)
+  const [isBusy, setBusy] = useState(false)
+  const entries = useMemo(() => entriesOf(slots, draft, jar.fillHeightMm), [slots, draft, jar.fillHeightMm])
+  const entryOf = (attribute: string, replicate: number) =>
+    entries.find((e) => e.attribute === attribute && e.replicate === replicate)
+  const verdicts = slots.map((slot) => ({
+    slot,
+    verdict: verdictOf(slot.field, entryOf(slot.field.attribute, slot.replicate), jar),
+  }))
+  const keptHere = outbox.kept.find((k) => k.pullJarId === jar.pullJarId)
+  const isDone = jar.state === 'done' || jar.state === 'missed'
+  const isResting = jar.state === 'resting' && !jar.isReady
+  const mayType = person.mayLog && !isDone && !isResting && !jar.isEarly && jar.isStudyRunning
+  const next = nextJar(bench, jar.code, outbox)
+  const slot = slots.find((s) => s.key === at)
+  const open = slots.filter((s) => (draft.texts[s.key] ?? '').trim() === '')
+
+  useEffect(() => {
+    // Others see who has it open. Without network, or with the jar in other hands, one may still go on.
+    if (mayType && jar.state === 'due' && !jar.openedBy)
+      void send(pullKeys.open(jar.pullJarId), 'POST', { version: jar.version }).then(
+        onChange,
+        () => undefined,
+      )
+    // Once per jar: the key of this component is the jar and its version.
+    // eslint-disable-next-line react-hooks/exhaustive-deps
+  }, [])
+
+  function type(key: string, text: string) {
+    const id = slots.find((s) => s.key === key)
+    setDraft((d) => ({
+      ...withIds(d, slots),
+      texts: { ...d.texts, [key]: text },
+      // A changed number is a new question.
+      confirmed: d.confirmed.filter((c) => id === undefined || c !== `${id.field.attribute}.${id.replicate}`),
+    }))
+  }
+
+  async function save(extra: Answer = {}) {
+    const filled = withIds(draft, slots)
+    const confirmed = [...new Set([...filled.confirmed, ...(extra.confirmed ?? [])])]
+    const sending = { ...filled, confirmed }
+    setDraft(() => sending)
+    const readings = entriesOf(slots, sending, jar.fillHeightMm)
+    const body = {
+      version: extra.version ?? jar.version,
+      claimedAt: new Date().toISOString(),
+      deviceNow: new Date().toISOString(),
+      note: sending.note,
+      readings,
+      leaveOut: extra.leaveOut ?? [],
+      ...(extra.resolution ? { resolution: extra.resolution } : {}),
+    }
+    setBusy(true)
+    setError(null)
+    try {
+      await send(pullKeys.readings(jar.pullJarId), 'POST', body)
+      dropKept(jar.pullJarId)
+      done(`Kept: ${jar.name}`)
+    } catch (refused) {
+      if (!(refused instanceof ClientError)) setError(refused)
+      else if (isPassing(refused)) {
+        keep({
+          personId: person.personId,
+          url: pullKeys.readings(jar.pullJarId),
+          body,
+          pullJarId: jar.pullJarId,
+          jarName: jar.name,
+          code: jar.code,
+        })
+        outbox.setOnline(false)
+        done(`Kept on this tablet: ${jar.name}. It goes out when the network is back.`)
+      } else if (refused.code === 'confirm') setAsked(refused)
+      else if (refused.code === 'already read') setTwice(refused.detail as AlreadyRead)
+      else setError(refused)
+    } finally {
+      setBusy(false)
+    }
+  }
+
+  function done(sentence: string) {
+    if (!outbox.kept.some((k) => k.pullJarId === jar.pullJarId)) forget()
+    setAsked(null)
+    setTwice(null)
+    toast(sentence)
+    onChange()
+    if (next) onOpen(next.code)
+    else onWalk()
+  }
+
+  function step() {
+    const from = slots.findIndex((s) => s.key === at)
+    const following = slots.slice(from + 1).find((s) => (draft.texts[s.key] ?? '') === '') ?? open[0]
+    if (following && following.key !== at) setAt(following.key)
+    else if (entries.length > 0) void save()
+  }
+
+  const tabs: TabState[] = [
+    ...verdicts.map(({ slot: s, verdict }) => ({
+      key: s.key,
+      slot: s,
+      verdict,
+      text: draft.texts[s.key] ?? '',
+    })),
+  ]
+  const impossible = verdicts.find((v) => v.verdict.state === 'impossible')
+  const hasLayers = slots.some((s) => s.kind === 'layer')
+  return (
+    <div className="mx-auto flex min-h-dvh max-w-[1180px] flex-col">
+      <JarHead jar={jar} outbox={outbox} onWalk={onWalk} />
+      <WalkStrip bench={bench} code={jar.code} />
+      <div className="flex flex-wrap items-center justify-between gap-3 px-4 pt-2.5 text-17 sm:px-7">
+        <p>
+          {jar.station.name}
+          {jar.station.temperatureC === null ? '' : `, ${jar.station.temperatureC} °C`}.{' '}
+          {jar.station.caution ? <b>{jar.station.caution}</b> : null}
+        </p>
+        {mayType ? (
+          <button
+            type="button"
+            className="min-h-11 underline underline-offset-4"
+            onClick={() => setMissing(true)}
+          >
+            Cannot be read
+          </button>
+        ) : null}
+      </div>
+      {keptHere ? (
+        <p className="mx-4 mt-3 border-l-4 border-ink pl-3 sm:mx-7" role="status">
+          {keptHere.refused
+            ? `The server did not take what was kept here: ${keptHere.refused}`
+            : 'What you typed is kept on this tablet and goes out when the network is back.'}
+        </p>
+      ) : null}
+      {jar.openedBy && jar.openedBy.personId !== person.personId && mayType ? (
+        <p className="mx-4 mt-3 border-l-4 border-ink pl-3 sm:mx-7" role="status">
+          <b>{jar.openedBy.name}</b> has this jar open. If you both keep it, both stay on record and you say
+          which counts.
+        </p>
+      ) : null}
+      {isDone || !mayType ? (
+        isResting || (jar.asks !== 'watch' && jar.state === 'due' && mayType) ? null : (
+          <DonePanel
+            jar={jar}
+            mayLog={person.mayLog}
+            onChange={onChange}
+            onWalk={onWalk}
+            next={next}
+            onOpen={onOpen}
+          />
+        )
+      ) : null}
+      {isResting ? <RestPanel jar={jar} onWalk={onWalk} onChange={onChange} /> : null}
+      {mayType ? (
+        <>
+          {hasLayers ? (
+            <LayersPanel
+              jar={jar}
+              slots={slots}
+              draft={draft}
+              verdicts={verdicts}
+              at={at}
+              onPick={setAt}
+              onText={type}
+            />
+          ) : (
+            <OverviewPanel jar={jar} tabs={tabs} at={at} onPick={setAt} onChange={onChange} />
+          )}
+          <SlotTabs tabs={tabs} at={at} onPick={setAt} note={draft.note} hasPhotos={person.mayAddPhotos} />
+          <div className="flex-1 bg-typed px-4 pb-5 pt-4 sm:px-7">
+            <ErrorNote error={error} />
+            {slot && slot.kind !== 'word' ? (
+              <ValuePanel
+                jar={jar}
+                slot={slot}
+                text={draft.texts[slot.key] ?? ''}
+                verdict={verdicts.find((v) => v.slot.key === slot.key)!.verdict}
+                instrument={draft.instruments[`${slot.field.attribute}.${slot.replicate}`] ?? null}
+                onInstrument={(id) =>
+                  setDraft((d) => ({
+                    ...d,
+                    instruments: { ...d.instruments, [`${slot.field.attribute}.${slot.replicate}`]: id },
+                  }))
+                }
+                onText={(text) => type(slot.key, text)}
+                onEnter={step}
+                keepButton={
+                  <KeepButton
+                    busy={isBusy}
+                    left={open.length}
+                    why={whyNotKeep(entries.length, impossible?.verdict)}
+                    hasNext={next !== null}
+                    onKeep={() => void save()}
+                    onStep={open.some((s) => s.key !== at) ? step : null}
+                  />
+                }
+              />
+            ) : (
+              <>
+                {slot?.kind === 'word' ? (
+                  <WordPanel
+                    slot={slot}
+                    text={draft.texts[slot.key] ?? ''}
+                    onText={(text) => type(slot.key, text)}
+                  />
+                ) : null}
+                {at === 'note' ? (
+                  <NotePanel note={draft.note} onNote={(note) => setDraft((d) => ({ ...d, note }))} />
+                ) : null}
+                {at === 'photo' ? <PhotoPanel jar={jar} /> : null}
+                <div className="ml-auto mt-4 max-w-[300px]">
+                  <KeepButton
+                    busy={isBusy}
+                    left={open.length}
+                    why={whyNotKeep(entries.length, impossible?.verdict)}
+                    hasNext={next !== null}
+                    onKeep={() => void save()}
+                    onStep={open.some((s) => s.key !== at) ? step : null}
+                  />
+                </div>
+              </>
+            )}
+          </div>
+        </>
+      ) : null}
+      {asked ? (
+        <AskAgain
+          refusal={asked}
+          onConfirm={() =>
+            void save({
+              confirmed: entries.map((e) => `${e.attribute}.${e.replicate}`),
+              leaveOut: jar.fields
+                .map((f) => f.attribute)
+                .filter((attribute) => !entries.some((e) => e.attribute === attribute)),
+            })
+          }
+          onAgain={() => setAsked(null)}
+          isBusy={isBusy}
+        />
+      ) : null}
+      {twice ? (
+        <TwoPeople
+          jar={jar}
+          person={person}
+          theirs={twice}
+          mine={entries}
+          isBusy={isBusy}
+          onDecide={(resolution) => void save({ resolution, version: twice.version })}
+          onClose={() => setTwice(null)}
+        />
+      ) : null}
+      {isMissing ? (
+        <MissDialog
+          jar={jar}
+          onClose={() => setMissing(false)}
+          onDone={() => {
+            setMissing(false)
+            done(`${jar.name} is noted as not read.`)
+          }}
+        />
+      ) : null}
+    </div>
+  )
+}
+
+/** What the person said when the server asked. */
+type Answer = {
+  confirmed?: string[]
+  leaveOut?: string[]
+  resolution?: { count: 'mine' | 'theirs'; reason: string }
+  version?: number
+}
+
+function whyNotKeep(
+  count: number,
+  verdict: { state: string; sentence?: string | null } | undefined,
+): string | undefined {
+  if (verdict?.state === 'impossible') return 'One number cannot be so.'
+  return count === 0 ? 'Type at least one value.' : undefined
+}
+
+type KeepProps = {
+  busy: boolean
+  left: number
+  why: string | undefined
+  hasNext: boolean
+  onKeep: () => void
+  onStep: (() => void) | null
+}
+
+/** While fields are open it steps on; keeping with some left out stays possible beside it. */
+function KeepButton({ busy, left, why, hasNext, onKeep, onStep }: KeepProps) {
+  if (left > 0 && onStep)
+    return (
+      <div className="grid grid-cols-[1fr_auto] gap-3">
+        <Button density="bench" kind="primary" onClick={onStep}>
+          Next field
+        </Button>
+        <Button density="bench" busy={busy} why={why} onClick={onKeep}>
+          Keep
+        </Button>
+      </div>
+    )
+  return (
+    <Button density="bench" kind="primary" className="w-full" busy={busy} why={why} onClick={onKeep}>
+      {hasNext ? 'Keep, open next' : 'Keep'}
+    </Button>
+  )
+}
+
+/** The next jar to read at the same station, then at those after it. */
+function nextJar(bench: Bench, code: string, outbox: Outbox) {
+  const kept = new Set(outbox.kept.map((k) => k.code))
+  const all = bench.stations.flatMap((s) => s.jars)
+  const from = all.findIndex((j) => j.code === code)
+  const isOpen = (j: (typeof all)[number]) =>
+    j.code !== code && !kept.has(j.code) && (j.state === 'due' || j.isReady)
+  return [...all.slice(from + 1), ...all.slice(0, Math.max(0, from))].find(isOpen) ?? null
+}

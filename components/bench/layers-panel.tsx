@@ -1,0 +1,159 @@
+'use client'
+
+import type { Draft, Slot } from '@/components/bench/draft'
+import { JarRuler } from '@/components/bench/jar-ruler'
+import { FieldBand, HollowDot } from '@/components/bench/value-panel'
+import { bandText, type Verdict } from '@/components/bench/verdict'
+import { StandingMark } from '@/components/marks/standing-mark'
+import type { BenchJarPage } from '@/lib/bench/queries/jar'
+import { readTyped } from '@/lib/reading/schema/typed'
+import { dayText } from '@/lib/report/rules'
+
+type Props = {
+  jar: BenchJarPage
+  slots: Slot[]
+  draft: Draft
+  verdicts: { slot: Slot; verdict: Verdict }[]
+  at: string
+  onPick: (key: string) => void
+  onText: (key: string, text: string) => void
+}
+
+/** The jar drawn as it is measured: layers follow the numbers, and the numbers follow the handles. */
+export function LayersPanel({ jar, slots, draft, verdicts, at, onPick, onText }: Props) {
+  const top = slots.find((s) => s.part === 'top')
+  const bottom = slots.find((s) => s.part === 'bottom')
+  if (!top || !bottom) return null
+  const fill = jar.fillHeightMm
+  const mm = (slot: Slot) => readTyped(draft.texts[slot.key] ?? '') ?? 0
+  const verdict = verdicts.find((v) => v.slot.key === top.key)?.verdict
+  const isOut = verdict?.state === 'value' && verdict.isOut
+  const set = (slot: Slot, value: number) =>
+    onText(slot.key, (Math.round(Math.max(0, Math.min(fill, value)) * 10) / 10).toFixed(1))
+  return (
+    <div className="grid grid-cols-[minmax(0,150px)_minmax(0,1fr)] gap-x-4 gap-y-3 px-4 pt-3 sm:grid-cols-[380px_minmax(0,1fr)] sm:px-7">
+      <JarRuler
+        fillMm={fill}
+        topMm={mm(top)}
+        bottomMm={mm(bottom)}
+        lastTopMm={lastMm(top, 'topMm')}
+        lastBottomMm={lastMm(top, 'bottomMm')}
+        onTop={(value) => set(top, value)}
+        onBottom={(value) => set(bottom, value)}
+      />
+      <div className="flex min-w-0 flex-col justify-between gap-3">
+        <Layer
+          title="Oil on top"
+          text={draft.texts[top.key] ?? ''}
+          isHere={at === top.key}
+          last={lastText(top, 'topMm')}
+          onPick={() => onPick(top.key)}
+          onStep={(by) => set(top, mm(top) + by)}
+        />
+        <div aria-live="polite">
+          <p className="flex flex-wrap items-baseline justify-between gap-x-3">
+            <b className="text-18">Separation</b>
+            <span className="text-17">{bandText(top.field)}</span>
+          </p>
+          <div className="flex items-center justify-between gap-4">
+            <p className={`text-48 font-700 leading-none sm:text-76 ${isOut ? 'text-alarm' : ''}`}>
+              {verdict?.state === 'value' ? verdict.value.toFixed(1) : '–'}
+              <span className="text-24 sm:text-36"> %</span>
+            </p>
+            {verdict?.state === 'value' ? (
+              <p className={`flex items-end gap-3 text-24 font-650 sm:text-30 ${isOut ? 'text-alarm' : ''}`}>
+                <StandingMark standing={isOut ? 'out' : 'steady'} size={34} />
+                <span className="hidden sm:inline">{isOut ? 'out' : 'inside'}</span>
+              </p>
+            ) : null}
+          </div>
+          <FieldBand field={top.field} now={verdict?.state === 'value' ? verdict.value : null} width={380} />
+        </div>
+        <Layer
+          title="Water below"
+          text={draft.texts[bottom.key] ?? ''}
+          isHere={at === bottom.key}
+          last={lastText(bottom, 'bottomMm')}
+          onPick={() => onPick(bottom.key)}
+          onStep={(by) => set(bottom, mm(bottom) + by)}
+        />
+      </div>
+    </div>
+  )
+}
+
+type LayerProps = {
+  title: string
+  text: string
+  isHere: boolean
+  last: string | null
+  onPick: () => void
+  onStep: (by: number) => void
+}
+
+function Layer({ title, text, isHere, last, onPick, onStep }: LayerProps) {
+  return (
+    <div className="flex flex-wrap items-center justify-between gap-3">
+      <button
+        type="button"
+        onClick={onPick}
+        aria-pressed={isHere}
+        className={`min-h-16 rounded text-left ${isHere ? 'border-b-[3px] border-ink' : 'border-b-[3px] border-transparent'}`}
+      >
+        <b className="block text-18">{title}</b>
+        <span className="text-36 font-650 leading-none sm:text-64">{text === '' ? '–' : text}</span>
+        <span className="text-20 sm:text-30"> mm</span>
+        {last ? (
+          <span className="block text-17">
+            <HollowDot /> {last}
+          </span>
+        ) : null}
+      </button>
+      <div className="flex gap-3">
+        <StepButton label={`${title}: 0.1 mm less`} sign="minus" onPress={() => onStep(-0.1)} />
+        <StepButton label={`${title}: 0.1 mm more`} sign="plus" onPress={() => onStep(0.1)} />
+      </div>
+    </div>
+  )
+}
+
+function StepButton({
+  label,
+  sign,
+  onPress,
+}: {
+  label: string
+  sign: 'plus' | 'minus'
+  onPress: () => void
+}) {
+  return (
+    <button
+      type="button"
+      aria-label={label}
+      onClick={onPress}
+      className="flex size-16 flex-col items-center justify-center rounded border-2 border-rule bg-paper active:bg-recess sm:size-[72px]"
+    >
+      <svg viewBox="0 0 32 32" width="32" height="32" aria-hidden>
+        <path
+          d={sign === 'plus' ? 'M4 16H28 M16 4V28' : 'M4 16H28'}
+          stroke="currentColor"
+          strokeWidth="3.5"
+        />
+      </svg>
+      <span aria-hidden className="text-17 leading-none">
+        0.1
+      </span>
+    </button>
+  )
+}
+
+function lastMm(slot: Slot, part: 'topMm' | 'bottomMm'): number | null {
+  const value = slot.field.last[0]?.detail[part]
+  return typeof value === 'number' ? value : null
+}
+
+function lastText(slot: Slot, part: 'topMm' | 'bottomMm'): string | null {
+  const last = slot.field.last[0]
+  const value = lastMm(slot, part)
+  return last && value !== null ? `${value.toFixed(1)} on ${dayText(last.day)}` : null
+}

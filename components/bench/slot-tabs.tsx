@@ -1,0 +1,98 @@
+import type { Slot } from '@/components/bench/draft'
+import { slotLabel, slotUnit, type Verdict } from '@/components/bench/verdict'
+
+export type TabState = { key: string; slot: Slot; verdict: Verdict; text: string }
+
+type Props = {
+  tabs: TabState[]
+  at: string
+  onPick: (key: string) => void
+  note: string
+  hasPhotos: boolean
+}
+
+/** The jar's fields in the order of the protocol; a check mark for what is in. */
+export function SlotTabs({ tabs, at, onPick, note, hasPhotos }: Props) {
+  return (
+    <div
+      role="tablist"
+      aria-label="What is measured"
+      className="mt-3 flex gap-3 overflow-x-auto px-4 sm:px-5"
+    >
+      {tabs.map((tab) => (
+        <Tab
+          key={tab.key}
+          label={slotLabel(tab.slot)}
+          text={
+            tab.text === '' ? 'not yet' : `${tab.text} ${tab.slot.kind === 'word' ? '' : slotUnit(tab.slot)}`
+          }
+          isHere={tab.key === at}
+          mark={
+            tab.verdict.state === 'value'
+              ? tab.verdict.isOut
+                ? 'out'
+                : 'in'
+              : tab.verdict.state === 'impossible'
+                ? 'wrong'
+                : null
+          }
+          onPick={() => onPick(tab.key)}
+        />
+      ))}
+      {hasPhotos ? (
+        <Tab
+          label="Photo"
+          text="jar in its light"
+          isHere={at === 'photo'}
+          mark={null}
+          onPick={() => onPick('photo')}
+        />
+      ) : null}
+      <Tab
+        label="Note"
+        text={note ? note.slice(0, 14) : 'none'}
+        isHere={at === 'note'}
+        mark={note ? 'in' : null}
+        onPick={() => onPick('note')}
+      />
+    </div>
+  )
+}
+
+type TabProps = {
+  label: string
+  text: string
+  isHere: boolean
+  mark: 'in' | 'out' | 'wrong' | null
+  onPick: () => void
+}
+
+function Tab({ label, text, isHere, mark, onPick }: TabProps) {
+  return (
+    <button
+      type="button"
+      role="tab"
+      aria-selected={isHere}
+      onClick={onPick}
+      className={
+        isHere
+          ? 'min-h-[74px] min-w-[116px] flex-1 border-t-[5px] border-ink bg-typed px-3 pb-2 text-left'
+          : 'mb-2.5 min-h-16 min-w-[116px] flex-1 rounded border-2 border-rule bg-paper px-3 py-1 text-left'
+      }
+    >
+      <span className="flex items-center justify-between gap-2">
+        <b className="text-18">{label}</b>
+        {mark === 'in' ? (
+          <svg viewBox="0 0 20 16" width="20" height="16" aria-label="in">
+            <path d="M2 8 8 14 18 2" fill="none" stroke="currentColor" strokeWidth="3" />
+          </svg>
+        ) : null}
+        {mark === 'out' ? <span className="font-700 text-alarm">out</span> : null}
+        {mark === 'wrong' ? <span className="font-700 text-alarm">no</span> : null}
+      </span>
+      <span className={`block truncate text-17 ${text === 'not yet' || text === 'none' ? 'text-soft' : ''}`}>
+        {text}
+      </span>
+    </button>
+  )
+}

@@ -1,0 +1,90 @@
+import type { DraftEntry, Slot } from '@/components/bench/draft'
+import type { BenchField } from '@/lib/bench/rules'
+import { ImpossibleEntry, valueOf } from '@/lib/reading/rules/value'
+import { figure } from '@/lib/report/rules'
+import { bandUse } from '@/components/marks/band-bar-shapes'
+
+export type JarMeasures = { tareG: number | null; grossG: number | null; fillHeightMm: number | null }
+
+/** What the typed text means now: the value it makes, or why it cannot be, and where it lies. */
+export type Verdict =
+  | { state: 'empty' }
+  | { state: 'impossible'; sentence: string; part: 'top' | 'bottom' | null }
+  | {
+      state: 'value'
+      value: number
+      isOut: boolean
+      isEdge: boolean
+      sentence: string | null
+      advice: string | null
+    }
+
+export function verdictOf(field: BenchField, entry: DraftEntry | undefined, jar: JarMeasures): Verdict {
+  if (!entry) return { state: 'empty' }
+  try {
+    const last = field.last[0]?.value ?? null
+    const planned = field.viscosity ? { viscosity: field.viscosity } : {}
+    const { value } = valueOf(entry, { planned, jar, spindles: [], last })
+    return judged(field, value)
+  } catch (error) {
+    if (!(error instanceof ImpossibleEntry)) throw error
+    const part = error.field === 'detail.topMm' ? 'top' : error.field === 'detail.bottomMm' ? 'bottom' : null
+    return { state: 'impossible', sentence: error.sentence, part }
+  }
+}
+
+function judged(field: BenchField, value: number): Verdict {
+  const { lower, upper } = field.band ?? { lower: null, upper: null }
+  const isBelow = lower !== null && value < lower
+  const isAbove = upper !== null && value > upper
+  if (isBelow || isAbove) {
+    const edge = isBelow ? lower : (upper ?? 0)
+    const side = isBelow ? 'below' : 'above'
+    const by =
+      field.unit === '%' || edge === 0
+        ? `${figure(field.attribute, Math.abs(value - edge))} ${field.unit === '%' ? 'points' : field.unit}`
+        : `${((Math.abs(value - edge) / Math.abs(edge)) * 100).toFixed(1)} %`
+    return {
+      state: 'value',
+      value,
+      isOut: true,
+      isEdge: false,
+      sentence: `${by} ${side} the band.`,
+      advice: 'Measure a second jar before anyone worries.',
+    }
+  }
+  const used = bandUse(value, { width: 1, lower, upper, initial: field.initial })
+  const isEdge = used >= 0.8 && (lower !== null || upper !== null)
+  return {
+    state: 'value',
+    value,
+    isOut: false,
+    isEdge,
+    sentence: isEdge ? `${Math.round(used * 100)} % of the band is used.` : null,
+    advice: null,
+  }
+}
+
+/** 5.20 to 5.80; at most 2.0; at least 38 600. */
+export function bandText(field: BenchField): string {
+  const { lower, upper } = field.band ?? { lower: null, upper: null }
+  const f = (n: number) => figure(field.attribute, n)
+  if (lower !== null && upper !== null) return `band ${f(lower)} to ${f(upper)}`
+  if (upper !== null) return `allowed up to ${f(upper)}`
+  if (lower !== null) return `allowed down to ${f(lower)}`
+  return 'no band'
+}
+
+export function slotLabel(slot: Slot): string {
+  if (slot.kind === 'layer') return slot.part === 'top' ? 'Oil on top' : 'Water below'
+  if (slot.kind === 'gross') return 'Mass'
+  const label = slot.kind === 'torque' ? 'Viscosity' : slot.field.label
+  return slot.field.replicates > 1 ? `${label} ${slot.replicate}` : label
+}
+
+export function slotUnit(slot: Slot): string {
+  if (slot.kind === 'layer') return 'mm'
+  if (slot.kind === 'torque') return '%'
+  if (slot.kind === 'gross') return 'g'
+  return slot.field.unit
+}

@@ -1,0 +1,53 @@
+'use client'
+
+type Props = {
+  onKey: (key: string) => void
+  /** What stands under the keys, such as the button that keeps the entry. */
+  children?: React.ReactNode
+}
+
+const keys = ['7', '8', '9', '4', '5', '6', '1', '2', '3', '.', '0', 'back'] as const
+
+/** Keys for gloves: 64 px high, 12 apart. The field keeps the focus, so that a real keyboard works beside it. */
+export function NumberPad({ onKey, children }: Props) {
+  return (
+    <div>
+      <div className="grid grid-cols-3 gap-3" role="group" aria-label="Number pad">
+        {keys.map((key) => (
+          <button
+            key={key}
+            type="button"
+            aria-label={key === 'back' ? 'Delete the last digit' : key === '.' ? 'Decimal point' : key}
+            onPointerDown={(event) => event.preventDefault()}
+            onClick={() => onKey(key)}
+            className="flex h-16 items-center justify-center rounded border-2 border-rule bg-ground text-36 font-600 leading-none active:bg-recess"
+          >
+            {key === 'back' ? <BackMark /> : key === '.' ? <span aria-hidden>•</span> : key}
+          </button>
+        ))}
+      </div>
+      {children ? <div className="mt-3">{children}</div> : null}
+    </div>
+  )
+}
+
+/** What a key does to the text that is being typed. */
+export function afterKey(text: string, key: string): string {
+  if (key === 'back') return text.slice(0, -1)
+  if (key === '.') return /[.,]/.test(text) ? text : `${text || '0'}.`
+  return text.length >= 12 ? text : text + key
+}
+
+function BackMark() {
+  return (
+    <svg viewBox="0 0 48 26" width="48" height="26" aria-hidden>
+      <path
+        d="M14 2H46V24H14L3 13Z M22 8 32 18 M32 8 22 18"
+        fill="none"
+        stroke="currentColor"
+        strokeWidth="2.5"
+        strokeLinejoin="round"
+      />
+    </svg>
+  )
+}
