@@ -20,7 +20,7 @@ const touchesDatabase = (target) =>
 /** What the server's rooms hold that works in the browser as well. */
 const browserSafe = [
   ...['lib/auth/actor', 'lib/auth/permissions', 'lib/db/id'],
-  ...['lib/http/address', 'lib/http/errors', 'lib/http/fetcher', 'lib/http/zod'],
+  ...['lib/http/errors', 'lib/http/fetcher', 'lib/http/zod'],
 ]
 
 /** Each wall: which files it holds for, which imports it refuses, and what to do instead. */
@@ -88,7 +88,7 @@ const walls = [
     instead: 'A page reads. Let the form send to a route under app/api, which calls the command.',
   },
   {
-    holdsFor: (file) => !isIn(file, 'lib/cli', 'tests'),
+    holdsFor: (file) => isIn(file, 'app', 'components', 'lib', 'migrations') && !isIn(file, 'lib/cli'),
     refuses: (target) => isIn(target, 'lib/cli', 'tests'),
     instead: 'lib/cli and tests stand on top of the house. Move what is shared to the room that owns it.',
   },
