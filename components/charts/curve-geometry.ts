@@ -1,3 +1,5 @@
+import { heatMarker } from '../marks/heat'
+import type { StationMarker } from '../marks/heat'
 import type { CurveBand, CurveSeries, TrendPoint } from './curve-data'
 
 /** Place on the plot: weeks along, share of the height from the foot (0) to the top (1). */
@@ -199,4 +201,32 @@ export function axisNumber(value: number, decimals: number): string {
 export function curveName(series: CurveSeries): string {
   if (series.kind === 'freeze-thaw') return 'Freeze-thaw'
   return series.kind === 'batch' ? series.label : `${series.label} °C`
+}
+
+/** The edge that a series moves towards. */
+export function nearerEdge(
+  { trend, points }: CurveSeries,
+  lower: number | null | undefined,
+  upper: number | null | undefined,
+): number | null {
+  if (typeof lower !== 'number') return upper ?? null
+  if (typeof upper !== 'number') return lower
+  const first = trend?.[0]?.mean ?? points[0]?.value ?? 0
+  const last = trend?.at(-1)?.mean ?? points.at(-1)?.value ?? 0
+  return last < first ? lower : upper
+}
+
+/** Batches have no temperature of their own to be told apart by, so they take the markers in turn. */
+const BATCH_MARKERS: StationMarker[] = [
+  'circle',
+  'square',
+  'triangle-up',
+  'triangle-down',
+  'diamond',
+  'cross',
+]
+
+export function markerOf(series: CurveSeries, index: number): StationMarker {
+  if (series.kind !== 'batch') return heatMarker(series.temperatureC)
+  return BATCH_MARKERS[index % BATCH_MARKERS.length] ?? 'circle'
 }

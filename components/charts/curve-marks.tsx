@@ -1,8 +1,8 @@
 import { Drawn } from '../marks/drawn'
-import { heatMarker, heatWeight } from '../marks/heat'
+import { heatWeight } from '../marks/heat'
 import { stationMarkerShapes } from '../marks/station-marker-shapes'
-import type { CurveInput, CurveSeries } from './curve-data'
-import { curveName, doubtGroups, spreadNames, washes } from './curve-geometry'
+import type { CurveInput } from './curve-data'
+import { curveName, doubtGroups, markerOf, nearerEdge, spreadNames, washes } from './curve-geometry'
 import type { CurveScale, PlottedCurve } from './curve-geometry'
 import { colourRole } from './curve-plot'
 import type { CurveTime } from './curve-plot'
@@ -115,11 +115,11 @@ function BandEdges({
 function Doubts({ input, curves, place }: { input: CurveInput; curves: PlottedCurve[]; place: CurvePlace }) {
   return (
     <>
-      {curves.map(({ series, doubted }) =>
+      {curves.map(({ series, doubted }, index) =>
         doubted.map(({ weeks, share }) => (
           <Drawn
             key={`${series.id}-${weeks}-${share}`}
-            shapes={stationMarkerShapes(heatMarker(series.temperatureC), {
+            shapes={stationMarkerShapes(markerOf(series, index), {
               x: place.x(weeks),
               y: place.y(share),
               size: 7.5,
@@ -232,19 +232,6 @@ function Leaving({
       )}
     </g>
   )
-}
-
-/** The edge that a series moves towards. */
-export function nearerEdge(
-  { trend, points }: CurveSeries,
-  lower: number | null | undefined,
-  upper: number | null | undefined,
-): number | null {
-  if (typeof lower !== 'number') return upper ?? null
-  if (typeof upper !== 'number') return lower
-  const first = trend?.[0]?.mean ?? points[0]?.value ?? 0
-  const last = trend?.at(-1)?.mean ?? points.at(-1)?.value ?? 0
-  return last < first ? lower : upper
 }
 
 /** Width of a name in the 17 px it is set in, near enough to keep it off today's line. */

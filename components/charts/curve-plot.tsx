@@ -4,10 +4,10 @@ import { useId } from 'react'
 import type { Key } from 'react'
 import { Area, ComposedChart, Line, Tooltip, XAxis, YAxis } from 'recharts'
 import { colourOf, Drawn } from '../marks/drawn'
-import { heatLine, heatMarker } from '../marks/heat'
+import { heatLine } from '../marks/heat'
 import { stationMarkerShapes } from '../marks/station-marker-shapes'
 import type { CurveInput, CurveSeries } from './curve-data'
-import { axisNumber, curveName, curveScale, plotCurve } from './curve-geometry'
+import { axisNumber, curveName, curveScale, markerOf, plotCurve } from './curve-geometry'
 import type { PlottedCurve } from './curve-geometry'
 import { CurveGround } from './curve-ground'
 import { CurveMarks } from './curve-marks'
@@ -86,7 +86,7 @@ export function CurvePlot({ input, time, frame }: { input: CurveInput; time: Cur
             tooltipType="none"
           />
         ))}
-        {curves.flatMap((curve) => {
+        {curves.flatMap((curve, index) => {
           const line = curve.series.kind === 'freeze-thaw' ? 1.5 : heatLine(curve.series.temperatureC)
           const colour = colourOf(colourRole(curve.series))
           const hasTrend = curve.trend.length > 0
@@ -120,7 +120,7 @@ export function CurvePlot({ input, time, frame }: { input: CurveInput; time: Cur
               strokeWidth={line}
               strokeDasharray={curve.series.kind === 'freeze-thaw' ? '9 5' : undefined}
               dot={(dot: { cx?: number; cy?: number; key?: Key | null }) => (
-                <Marker key={dot.key} series={curve.series} x={dot.cx} y={dot.cy} />
+                <Marker key={dot.key} series={curve.series} index={index} x={dot.cx} y={dot.cy} />
               )}
             />,
           ]
@@ -154,10 +154,10 @@ function Hatch({ id, colour }: { id: string; colour: string }) {
   )
 }
 
-function Marker({ series, x, y }: { series: CurveSeries; x?: number; y?: number }) {
+function Marker({ series, index, x, y }: { series: CurveSeries; index: number; x?: number; y?: number }) {
   if (typeof x !== 'number' || typeof y !== 'number' || Number.isNaN(y)) return null
   const role = colourRole(series)
-  const shapes = stationMarkerShapes(heatMarker(series.temperatureC), {
+  const shapes = stationMarkerShapes(markerOf(series, index), {
     x,
     y,
     size: 9,

@@ -3,11 +3,11 @@
 import { useState } from 'react'
 import type { ReactNode } from 'react'
 import { colourOf, Drawn } from '../marks/drawn'
-import { heatLine, heatMarker, heatWeight } from '../marks/heat'
+import { heatLine, heatWeight } from '../marks/heat'
 import { stationMarkerShapes } from '../marks/station-marker-shapes'
 import { StandingMark } from '../marks/standing-mark'
 import type { CurveInput, CurveSeries } from './curve-data'
-import { curveName } from './curve-geometry'
+import { curveName, markerOf } from './curve-geometry'
 import { colourRole, CurvePlot } from './curve-plot'
 import type { CurveTime } from './curve-plot'
 import { CurveTable } from './curve-table'
@@ -93,8 +93,8 @@ function Plot({
         </p>
         {isNarrow && input.band ? <p className="text-14 font-600 text-alarm">{input.band.text}</p> : null}
         <ul className={isNarrow ? 'mt-1 flex flex-wrap gap-x-5' : 'mt-2'}>
-          {input.series.map((series) => (
-            <Key key={series.id} series={series} />
+          {input.series.map((series, index) => (
+            <Key key={series.id} series={series} index={index} />
           ))}
         </ul>
         <button
@@ -127,7 +127,7 @@ function Plot({
   )
 }
 
-function Key({ series }: { series: CurveSeries }) {
+function Key({ series, index }: { series: CurveSeries; index: number }) {
   const role = colourRole(series)
   return (
     <li className="flex h-[30px] items-center gap-2.5 text-17 whitespace-nowrap">
@@ -139,7 +139,7 @@ function Key({ series }: { series: CurveSeries }) {
           strokeDasharray={series.kind === 'freeze-thaw' ? '6 4' : undefined}
         />
         <Drawn
-          shapes={stationMarkerShapes(heatMarker(series.temperatureC), {
+          shapes={stationMarkerShapes(markerOf(series, index), {
             x: 0,
             y: 0,
             size: 10,
