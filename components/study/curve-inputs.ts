@@ -1,0 +1,133 @@
+import type { CurveInput, CurveSeries, TrendPoint } from '@/components/charts/curve-data'
+import { attributes, type AttributeKey } from '@/lib/reading/schema/attributes'
+import type { SeriesFinding } from '@/lib/science/series'
+import type { CurvesPage } from '@/lib/study/queries/curves'
+import { spokenDay } from '@/lib/study/rules/calendar'
+import { shownValue, shownWithUnit } from '@/lib/study/rules/words'
+
+type Series = CurvesPage['series'][number]
+
+/** One plot for each attribute of one batch; separation stands first, then what regression serves. */
+export function curveInputs(page: CurvesPage, batchId: string): CurveInput[] {
+  const own = page.series.filter((series) => series.batchId === batchId)
+  return page.study.attributes.flatMap(({ attribute, method }) => {
+    const series = own.filter((one) => one.attribute === attribute)
+    const known = attributes[attribute]
+    const [first] = series
+    if (!first || 'words' in known) return []
+    const isThousand = attribute === 'viscosity' && first.finding.initial >= 10_000
+    const scale = isThousand ? 1000 : 1
+    return [
+      {
+        title: known.label,
+        unit: [isThousand ? 'thousand mPa·s' : known.unit, ...split(method)].filter(Boolean),
+        decimals: attribute === 'ph' ? 2 : attribute === 'viscosity' ? 0 : 1,
+        band: bandOf(first.finding, attribute, scale),
+        series: page.stations.toReversed().flatMap((station) => {
+          const one = series.find((candidate) => candidate.studyStationId === station.id)
+          return one ? [seriesOf(one, station, attribute, scale)] : []
+        }),
+        notes: notesOf(series),
+      },
+    ]
+  })
+}
+
+/** The method in lines that fit beside the plot. */
+function split(method: string): string[] {
+  return method.split(', ').reduce<string[]>((lines, part) => {
+    const last = lines.at(-1)
+    if (last !== undefined && last.length + part.length < 20) lines[lines.length - 1] = `${last}, ${part}`
+    else lines.push(part)
+    return lines
+  }, [])
+}
+
+function seriesOf(
+  series: Series,
+  station: CurvesPage['stations'][number],
+  attribute: AttributeKey,
+  scale: number,
+): CurveSeries {
+  const { finding } = series
+  return {
+    id: station.id,
+    label: String(station.temperatureC ?? 25).replace('-', '−'),
+    kind: station.isFreezeThaw ? 'freeze-thaw' : 'temperature',
+    temperatureC: station.temperatureC ?? 25,
+    standing: series.standing,
+    points: finding.points.map((point) => ({
+      weeks: point.time,
+      value: point.mean / scale,
+      text: shownWithUnit(attribute, point.mean),
+      doubt: point.counted ? null : (point.doubt ?? 'takes no part in the trend'),
+    })),
+    trend: trendOf(series, attribute, scale),
+    leaves:
+      series.standing === 'leaning' && finding.leavesAt !== null
+        ? { weeks: finding.leavesAt, low: finding.leavesAtLow, high: finding.leavesAtHigh }
+        : null,
+  }
+}
+
+/** Separation that is out follows no straight line any more. */
+function trendOf(series: Series, attribute: AttributeKey, scale: number): TrendPoint[] | null {
+  if (series.line.length === 0 || series.standing === 'untold') return null
+  if (attribute === 'separation' && series.standing === 'out') return null
+  return series.line.map(({ time, mean, low, high }) => ({
+    weeks: time,
+    mean: mean / scale,
+    low: low / scale,
+    high: high / scale,
+  }))
+}
+
+function bandOf({ band, initial }: SeriesFinding, attribute: string, scale: number) {
+  const { lower, upper } = band
+  if (lower === null && upper === null) return null
+  const shown = (value: number) => (scale === 1 ? shownValue(attribute, value) : (value / scale).toFixed(1))
+  const unit = scale === 1 && attributes[attribute as AttributeKey].unit === '%' ? ' %' : ''
+  const text =
+    lower === null
+      ? `allowed up to ${shown(upper!)}${unit}`
+      : upper === null
+        ? `at least ${shown(lower)}${unit}`
+        : `band ${shown(lower)} to ${shown(upper)}${unit}, initial ${shown(initial)}`
+  return { lower: lower === null ? null : lower / scale, upper: upper === null ? null : upper / scale, text }
+}
+
+/** Weeks in which readings wait for a repeat, said once with the reason that most of them share. */
+function notesOf(series: Series[]) {
+  const notes = new Map<number, { text: string; count: number }>()
+  for (const { finding } of series) {
+    for (const point of finding.points) {
+      if (point.counted || !point.doubt) continue
+      const week = Math.round(point.time)
+      const note = notes.get(week)
+      if (note) note.count += 1
+      else
+        notes.set(week, {
+          text: `${point.day ? `${spokenDay(point.day, false)}: ` : ''}${doubtWords(point.doubt)}`,
+          count: 1,
+        })
+    }
+  }
+  return [...notes].map(([weeks, { text, count }]) => ({
+    weeks,
+    text: count > 1 ? `${text}. No trend uses these ${count}.` : `${text}. No trend uses it.`,
+  }))
+}
+
+const knownDoubts: Record<string, string> = {
+  jump: 'far from its own line',
+  spread: 'replicates lie too far apart',
+  torque: 'torque outside its range',
+  'common shift': 'one instrument read off everywhere',
+}
+
+function doubtWords(doubt: string): string {
+  return doubt
+    .split('; ')
+    .map((reason) => knownDoubts[reason] ?? reason)
+    .join(', ')
+}

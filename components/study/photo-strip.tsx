@@ -1,0 +1,88 @@
+import Link from 'next/link'
+import type { TimeScale } from '@/components/charts/time-scale'
+import { StationLabel } from '@/components/ui/station-label'
+import { photoKeys } from '@/lib/photo/schema'
+import type { CurvesPage } from '@/lib/study/queries/curves'
+import { degrees } from '@/lib/study/rules/finding'
+
+type Props = {
+  code: string
+  batch: string
+  photos: CurvesPage['photos']
+  stations: CurvesPage['stations']
+  /** Id of the station whose photos are shown; the one with the most where nothing is said. */
+  picked: string | null
+  scale: TimeScale
+}
+
+const width = 40
+const height = 94
+
+/** The watch jar of one station through time, each photo at its own week of the ruler above. */
+export function PhotoStrip({ code, batch, photos, stations, picked, scale }: Props) {
+  const withPhotos = stations.filter((station) => photos.some((photo) => photo.studyStationId === station.id))
+  const station =
+    withPhotos.find((one) => one.id === picked) ??
+    withPhotos.toSorted((a, b) => countAt(photos, b.id) - countAt(photos, a.id))[0]
+  if (!station) return null
+  const shown = newestOfEach(photos.filter((photo) => photo.studyStationId === station.id))
+  return (
+    <section aria-label={`Photos at ${nameOf(station)}`} className="relative" style={{ height: height + 12 }}>
+      <div className="absolute top-6 left-0 hidden sm:block">
+        <StationLabel celsius={station.isFreezeThaw ? null : station.temperatureC} size={46} />
+        <p className="mt-1 text-13 text-soft">photos</p>
+      </div>
+      {shown.map((photo) => (
+        <a
+          key={photo.id}
+          href={photoKeys.original(photo.id)}
+          className="absolute top-1"
+          style={{ left: scale.x(photo.timeWeeks ?? 0) - width / 2 }}
+        >
+          {/* A private picture behind a permission check: the image optimiser cannot fetch it. */}
+          {/* eslint-disable-next-line @next/next/no-img-element */}
+          <img
+            src={photoKeys.preview(photo.id)}
+            alt={`Jar ${photo.jarCode} at ${nameOf(station)}, ${photo.label ?? 'initial'}`}
+            width={width}
+            height={height}
+            loading="lazy"
+            className="block border border-ink object-cover"
+            style={{ width, height }}
+          />
+        </a>
+      ))}
+      {withPhotos.length > 1 ? (
+        <p className="absolute right-0 bottom-0 bg-ground pl-2 text-15">
+          photos at{' '}
+          {withPhotos.map((one) => (
+            <Link
+              key={one.id}
+              href={`/studies/${encodeURIComponent(code)}/curves?batch=${encodeURIComponent(batch)}&station=${one.id}`}
+              scroll={false}
+              aria-current={one.id === station.id ? 'true' : undefined}
+              className={`ml-2 ${one.id === station.id ? 'font-700' : 'underline underline-offset-4'}`}
+            >
+              {nameOf(one)}
+            </Link>
+          ))}
+        </p>
+      ) : null}
+    </section>
+  )
+}
+
+type Station = Props['stations'][number]
+
+function nameOf(station: Station): string {
+  return station.isFreezeThaw ? 'freeze-thaw' : degrees(station.temperatureC)
+}
+
+function countAt(photos: Props['photos'], stationId: string): number {
+  return photos.filter((photo) => photo.studyStationId === stationId).length
+}
+
+/** One photo a pull: the one taken last. */
+function newestOfEach(photos: Props['photos']): Props['photos'] {
+  return [...new Map(photos.map((photo) => [photo.timeWeeks ?? photo.id, photo])).values()]
+}

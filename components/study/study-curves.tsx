@@ -1,0 +1,70 @@
+'use client'
+
+import useSWR from 'swr'
+import { Curves } from '@/components/charts/curves'
+import { Empty } from '@/components/ui/empty'
+import { LinkButton } from '@/components/ui/link-button'
+import { fetcher } from '@/lib/http/fetcher'
+import type { CurvesPage } from '@/lib/study/queries/curves'
+import { studyKeys } from '@/lib/study/schema'
+import { BatchTabs } from './batch-tabs'
+import { curveInputs } from './curve-inputs'
+import { PhotoStrip } from './photo-strip'
+import { StudyHeading, type StudyRights } from './study-heading'
+
+type Props = { code: string; rights: StudyRights; batch: string | null; station: string | null }
+
+/** Every measured attribute over the study's own time, under one ruler with the photos of one station. */
+export function StudyCurves({ code, rights, batch, station }: Props) {
+  const { data: page } = useSWR<CurvesPage>(studyKeys.curves(code), fetcher)
+  if (!page) return null
+  const { study, batches } = page
+  const shown = batches.find((one) => one.code === batch) ?? batches[0]
+  const plots = shown ? curveInputs(page, shown.id) : []
+  const photos = page.photos.filter((photo) => photo.batchId === shown?.id)
+  return (
+    <>
+      <StudyHeading
+        study={study}
+        batches={batches}
+        part="curves"
+        rights={rights}
+        headline={page.finding.headline}
+        sentence={page.finding.sentence}
+      />
+      {batches.length > 1 ? (
+        <BatchTabs code={code} path="/curves" batches={batches} shown={shown?.code ?? ''} />
+      ) : null}
+      <div className="mt-5">
+        {plots.length === 0 ? (
+          <Empty
+            title="No curve yet"
+            sentence="Curves begin with the first readings; a trend needs five time points."
+            act={<LinkButton href={`/studies/${encodeURIComponent(code)}`}>Open the sheet</LinkButton>}
+          />
+        ) : (
+          <Curves
+            plots={plots}
+            startOn={study.startedOn}
+            endWeeks={study.endWeeks}
+            todayWeeks={page.todayWeeks}
+            strip={
+              photos.length === 0
+                ? undefined
+                : (scale) => (
+                    <PhotoStrip
+                      code={code}
+                      batch={shown?.code ?? ''}
+                      photos={photos}
+                      stations={page.stations}
+                      picked={station}
+                      scale={scale}
+                    />
+                  )
+            }
+          />
+        )}
+      </div>
+    </>
+  )
+}

@@ -1,0 +1,99 @@
+'use client'
+
+import Link from 'next/link'
+import type { ReactNode } from 'react'
+import { Heading } from '@/components/ui/heading'
+import type { StudyBatchRow } from '@/lib/study/queries/head'
+import type { ShownStudy } from '@/lib/study/queries/sheet'
+import { spokenDay } from '@/lib/study/rules/calendar'
+import type { Phrase } from '@/lib/study/rules/finding'
+import { FollowButton } from './follow-button'
+import { Phrases } from './phrases'
+
+export type StudyPart = 'sheet' | 'curves' | 'readings' | 'jars' | 'record'
+/** What this person may do here; what would be refused is not shown. */
+export type StudyRights = {
+  mayWrite: boolean
+  mayPutForward: boolean
+  mayReadReadings: boolean
+  maySeeJars: boolean
+  maySeeRecord: boolean
+  mayReadBatches: boolean
+}
+
+type Props = {
+  study: ShownStudy
+  batches: StudyBatchRow[]
+  part: StudyPart
+  rights: StudyRights
+  headline: Phrase[]
+  sentence?: ReactNode
+  acts?: ReactNode
+}
+
+export function StudyHeading({ study, batches, part, rights, headline, sentence, acts }: Props) {
+  const base = `/studies/${encodeURIComponent(study.code)}`
+  const tab = (key: StudyPart, label: string, path: string) => ({
+    href: `${base}${path}`,
+    label,
+    isHere: part === key,
+  })
+  return (
+    <Heading
+      crumb={<Crumb study={study} batches={batches} rights={rights} />}
+      headline={<Phrases phrases={headline} />}
+      sentence={sentence}
+      tabsLabel={`Parts of study ${study.code}`}
+      tabs={[
+        tab('sheet', 'Sheet', ''),
+        tab('curves', 'Curves', '/curves'),
+        ...(rights.mayReadReadings ? [tab('readings', 'Readings', '/readings')] : []),
+        ...(rights.maySeeJars ? [tab('jars', 'Jars', '/jars')] : []),
+        ...(rights.maySeeRecord ? [tab('record', 'Record', '/record')] : []),
+      ]}
+      acts={
+        <>
+          {acts}
+          <FollowButton code={study.code} isFollowing={study.isFollowing} />
+          {rights.mayPutForward ? (
+            <Link
+              href={`/cases/new?study=${encodeURIComponent(study.code)}`}
+              className="btn"
+              data-kind="secondary"
+            >
+              Put a shelf-life case forward
+            </Link>
+          ) : null}
+        </>
+      }
+    />
+  )
+}
+
+function Crumb({ study, batches, rights }: Pick<Props, 'study' | 'batches' | 'rights'>) {
+  const [first] = batches
+  return (
+    <>
+      {study.code}, {batches.length === 1 ? 'batch ' : 'batches '}
+      {batches.map((batch, index) => (
+        <span key={batch.id}>
+          {index > 0 ? (index === batches.length - 1 ? ' and ' : ', ') : ''}
+          {rights.mayReadBatches ? <Link href={`/batches/${batch.code}`}>{batch.code}</Link> : batch.code}
+        </span>
+      ))}
+      {first ? `: ${first.formulaName}, ${inside(first)}. ` : '. '}
+      {study.title}, {span(study.endWeeks)}, begun {spokenDay(study.startedOn)}
+      {study.endedOn ? `, ended ${spokenDay(study.endedOn)}` : ''}
+    </>
+  )
+}
+
+function inside(batch: StudyBatchRow): string {
+  const what = batch.emulsionType === 'oil-in-water' ? 'oil' : 'water'
+  return `${batch.internalPercent.toFixed(1)} % ${what} inside`
+}
+
+export function span(endWeeks: number): string {
+  if (endWeeks > 52) return `${Math.round((endWeeks / 13) * 3)} months`
+  return `${endWeeks} ${endWeeks === 1 ? 'week' : 'weeks'}`
+}

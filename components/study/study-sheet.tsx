@@ -1,0 +1,106 @@
+'use client'
+
+import Link from 'next/link'
+import { useState } from 'react'
+import useSWR from 'swr'
+import { CellStrip } from '@/components/charts/cell-strip'
+import { Sheet } from '@/components/charts/sheet'
+import { fetcher } from '@/lib/http/fetcher'
+import { namedJar } from '@/lib/jar/rules'
+import type { SheetPage, SheetShelf } from '@/lib/study/queries/sheet'
+import { spokenDay } from '@/lib/study/rules/calendar'
+import { studyKeys } from '@/lib/study/schema'
+import { BatchTabs } from './batch-tabs'
+import { sheetProps, stripOf } from './sheet-props'
+import { StudyActs } from './study-acts'
+import { StudyHeading, type StudyRights } from './study-heading'
+
+type Picked = { rowId: string; weeks: number }
+
+/** The sheet of a study: the finding, the shelves, and the picked jar at the foot. */
+export function StudySheet({
+  code,
+  rights,
+  batch,
+}: {
+  code: string
+  rights: StudyRights
+  batch: string | null
+}) {
+  const { data: sheet } = useSWR<SheetPage>(studyKeys.sheet(code), fetcher)
+  const [picked, setPicked] = useState<Picked | null>(null)
+  if (!sheet) return null
+  const { study, batches } = sheet
+  const shown = batches.find((one) => one.code === batch) ?? batches[0]
+  const shelves = sheet.shelves.find((one) => one.batchId === shown?.id)?.rows ?? []
+  const selected = picked ?? lastRead(shelves)
+  const shelf = shelves.find((one) => one.station.id === selected?.rowId)
+  const unplaced = sheet.flags.filter((flag) => flag.studyStationId === null)
+  return (
+    <>
+      <StudyHeading
+        study={study}
+        batches={batches}
+        part="sheet"
+        rights={rights}
+        headline={sheet.finding.headline}
+        sentence={sheet.finding.sentence}
+        acts={rights.mayWrite ? <StudyActs study={study} /> : null}
+      />
+      {batches.length > 1 ? (
+        <BatchTabs code={code} path="" batches={batches} shown={shown?.code ?? ''} />
+      ) : null}
+      {unplaced.length > 0 ? (
+        <ul className="mt-4 border-t border-hair">
+          {unplaced.map((flag) => (
+            <li key={flag.number} className="flex flex-wrap items-baseline gap-x-4 border-b border-hair py-2">
+              <b>Flag {flag.number}</b>
+              <span className="min-w-0 flex-1">{flag.sentence}</span>
+              <Link href={`/flags/${flag.number}`} className="font-650 underline underline-offset-2">
+                Answer<span className="sr-only"> flag {flag.number}</span>
+              </Link>
+            </li>
+          ))}
+        </ul>
+      ) : null}
+      <div className="mt-5">
+        {shown ? (
+          <Sheet
+            title={`Sheet of ${code}, batch ${shown.code}`}
+            {...sheetProps(sheet, shown.id)}
+            selected={selected}
+            onSelect={setPicked}
+          />
+        ) : null}
+      </div>
+      {shelf && selected ? <Strip sheet={sheet} shelf={shelf} weeks={selected.weeks} /> : null}
+    </>
+  )
+}
+
+function Strip({ sheet, shelf, weeks }: { sheet: SheetPage; shelf: SheetShelf; weeks: number }) {
+  const cell = shelf.cells.find((one) => one.weeks === weeks)
+  if (!cell) return null
+  const note = [
+    cell.pullLabel,
+    spokenDay(cell.dueOn || sheet.study.startedOn, false),
+    ...(cell.readBy ? [`read by ${cell.readBy}`] : cell.state === 'read' ? [] : [cell.state]),
+  ].join(', ')
+  return (
+    <div className="sticky bottom-0 z-10 mt-6">
+      <CellStrip
+        code={cell.code ? namedJar(cell.code, shelf.station) : 'initial'}
+        note={note}
+        attributes={stripOf(shelf, weeks)}
+      />
+    </div>
+  )
+}
+
+/** Opened on what there is to see: the newest reading of the worst shelf. */
+function lastRead(shelves: SheetShelf[]): Picked | null {
+  const ranks = ['untold', 'steady', 'leaning', 'out']
+  const worst = shelves.toSorted((a, b) => ranks.indexOf(b.standing) - ranks.indexOf(a.standing))[0]
+  const cell = worst?.cells.filter((one) => one.state === 'read').at(-1)
+  return worst && cell ? { rowId: worst.station.id, weeks: cell.weeks } : null
+}
