@@ -79,10 +79,11 @@ function trendUsesBand(
 /** How the comparison with the coldest other station confirms the trend, or null. */
 function againstColdest(input: LeanInput, coldest: ColdestStation, trend: TrendFit): string | null {
   const { points, band, initial, initialTime, endTime, repeatabilitySd } = input
-  const latest = points[points.length - 1]!.time + sameDay
-  const cold = coldest.times
-    .map((time, i) => ({ time, mean: coldest.values[i]!, day: coldest.days?.[i] ?? null }))
-    .filter((c) => c.time <= latest)
+  const cold = coldest.times.map((time, i) => ({
+    time,
+    mean: coldest.values[i]!,
+    day: coldest.days?.[i] ?? null,
+  }))
   const differences: TrendPoint[] = []
   for (const point of points) {
     if (point.isInitial) continue
@@ -95,11 +96,12 @@ function againstColdest(input: LeanInput, coldest: ColdestStation, trend: TrendF
     const fit = fitTrend(differences, repeatabilitySd, Math.SQRT2)
     if (fit && Math.sign(fit.slope) === Math.sign(trend.slope) && fit.slopeP < 0.05) return 'difference'
   }
-  const replicates = points[points.length - 1]!.replicates
+  const { replicates, time: latest } = points[points.length - 1]!
+  const known = cold.filter((c) => c.time < latest + sameDay)
   const alone = trendUsesBand(
     [
       { time: initialTime, mean: initial, replicates: points[0]!.replicates },
-      ...cold.map((c) => ({ ...c, replicates })),
+      ...known.map((c) => ({ ...c, replicates })),
     ],
     band,
     initial,

@@ -41,7 +41,7 @@ export function sentenceOf(finding: RuleFinding, context: SentenceContext): stri
     case 'lean':
       return `${subject} is leaning: its trend has used ${percent(n('usedNow'))} of the band${leaving(evidence, context)}.`
     case 'onset':
-      return `Separation has begun at ${station}: ${value(n('percent'))} in ${when(finding.at)}, above what can be told from none in ${evidence.seenIn}.`
+      return `Separation has begun at ${station}: ${value(n('percent'))} in ${when(finding.at)}, above the ${value(n('detectionLimit'))} that can be told from none, in ${evidence.seenIn}.`
     case 'jump':
       return typeof evidence.repeat === 'number'
         ? jarsDiffer(subject, evidence, context)
@@ -49,7 +49,7 @@ export function sentenceOf(finding: RuleFinding, context: SentenceContext): stri
     case 'spread':
       return typeof evidence.repeat === 'number'
         ? jarsDiffer(subject, evidence, context)
-        : `The replicates of ${context.attribute} at ${station} lie ${value(n('range'))} apart; repeats explain ${value(n('allowed'))}. Measure again.`
+        : `The replicates of ${context.attribute} at ${station} lie ${value(n('range'))} apart, more than repeats explain. Measure again.`
     case 'torque':
       return `${evidence.reason}. Check spindle and speed against the initial.`
   }
