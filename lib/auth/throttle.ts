@@ -1,6 +1,7 @@
 import { createHash } from 'node:crypto'
 import { RateLimiterPostgres, RateLimiterRes } from 'rate-limiter-flexible'
-import { appPool } from '@/lib/db/client'
+import { createPool } from '@/lib/db/client'
+import { databaseUrl } from '@/lib/env'
 import { refuse } from '@/lib/http/errors'
 
 // An account is slowed per address it is tried from, so that a stranger's tries never lock the owner out.
@@ -42,10 +43,19 @@ async function consume(limit: Limit, key: string): Promise<void> {
   }
 }
 
+// Counting happens while a sign-in's transaction is open: on the same pool, ten sign-ins at once would hold all
+// connections and wait for an eleventh.
+const shared = globalThis as typeof globalThis & { stillstandCounters?: ReturnType<typeof createPool> }
+
+function countersPool() {
+  shared.stillstandCounters ??= createPool(databaseUrl('app'), 2)
+  return shared.stillstandCounters
+}
+
 function limiter(limit: Limit): RateLimiterPostgres {
   return new RateLimiterPostgres({
     ...limit,
-    storeClient: appPool(),
+    storeClient: countersPool(),
     tableName: 'rate_limit',
     tableCreated: true,
     clearExpiredByTimeout: false,

@@ -2,16 +2,16 @@ import { Server, type IncomingMessage } from 'node:http'
 import { env } from '@/lib/env'
 
 const header = 'x-stillstand-address'
-const installed = Symbol.for('stillstand.address')
+const state = globalThis as typeof globalThis & { stillstandAddress?: true }
 
 /**
  * Writes the socket's address into a header of our own before anything reads the request. Next passes on
  * whatever X-Forwarded-For the caller made up, so that one cannot slow down a guesser.
  */
 export function installAddress(): void {
-  const prototype = Server.prototype as Server & { [installed]?: true }
-  if (prototype[installed]) return
-  prototype[installed] = true
+  if (state.stillstandAddress) return
+  state.stillstandAddress = true
+  const { prototype } = Server
   const emit = prototype.emit
   prototype.emit = function (this: Server, event: string, ...rest: unknown[]): boolean {
     if (event === 'request' || event === 'upgrade') {
@@ -30,5 +30,6 @@ export function clientAddress(request: Request): string {
     const claimed = hops.at(-trusted)
     if (claimed) return claimed
   }
-  return request.headers.get(header) ?? 'unknown'
+  // Until it is installed the header is the caller's own word and worth nothing.
+  return (state.stillstandAddress && request.headers.get(header)) || 'unknown'
 }

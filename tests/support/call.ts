@@ -1,5 +1,9 @@
 import { newId } from '@/lib/db/id'
+import { installAddress } from '@/lib/http/address'
 import type { Route } from '@/lib/http/route'
+
+// The routes believe the address that call() gives as they would the server's own.
+installAddress()
 
 type Options = {
   cookie?: string | undefined
