@@ -69,6 +69,8 @@ export function InciCell({ row, label, value, isKnown, error, onText, onPick, on
         value={value}
         error={error}
         placeholder="INCI name"
+        title={value.length > 26 ? value : undefined}
+        className={value.length > 26 ? 'text-13' : ''}
         onBlur={() => setIsOpen(false)}
         onText={(text) => {
           setIsOpen(true)

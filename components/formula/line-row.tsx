@@ -51,6 +51,7 @@ export function LineRow({ line, errors, remainder, was, onChange, onPick, onAdd,
         />
       </td>
       <td className="whitespace-nowrap py-0.5 text-right align-middle text-13">
+        {line.isRemainder ? <span className="mr-1.5">q.s.</span> : null}
         {was ? (
           <span title={`${was} in the version before`}>
             <svg viewBox="0 0 10 10" width="10" height="10" aria-hidden className="mr-1 inline">
@@ -66,7 +67,7 @@ export function LineRow({ line, errors, remainder, was, onChange, onPick, onAdd,
           {...cell('percent')}
           label={`% w/w of ${name}`}
           inputMode="decimal"
-          value={line.isRemainder ? `q.s. ${percentText(remainder)}` : line.percent}
+          value={line.isRemainder ? percentText(remainder) : line.percent}
           error={errors.percent}
           onText={(text) => onChange(typedShare(text))}
           className="text-right text-16 font-650"
@@ -114,6 +115,5 @@ export function LineRow({ line, errors, remainder, was, onChange, onPick, onAdd,
 /** "q.s." or "qs" typed as the share makes the line the one that fills up to 100. */
 function typedShare(text: string): Partial<TypedLine> {
   if (/^q\.?\s?s\.?$/i.test(text.trim())) return { isRemainder: true, percent: '' }
-  const isStillRemainder = /^q\.s\. [\d.]+$/.test(text)
-  return isStillRemainder ? {} : { isRemainder: false, percent: text.replace(/^q\.?s?\.?\s?/i, '') }
+  return { isRemainder: false, percent: text }
 }

@@ -52,7 +52,7 @@ export function LineSheet({
 
   function addLine(phase: string, after?: string) {
     const own = lines.filter((line) => line.phase === phase)
-    const isInternal = own[0]?.isInternal ?? (phase === 'B') === true
+    const isInternal = own[0]?.isInternal ?? phase === 'B'
     const line = emptyLine(newId(), phase, isInternal)
     const index = lines.findIndex((other) => other.id === (after ?? own.at(-1)?.id))
     onLines(
@@ -122,8 +122,8 @@ export function LineSheet({
           <caption className="sr-only">Lines of the formula</caption>
           <colgroup>
             <col />
-            {[112, 66, 84, 60, 66, 40, 84].map((width) => (
-              <col key={width} style={{ width }} />
+            {columnWidths.map((width, index) => (
+              <col key={index} style={{ width }} />
             ))}
           </colgroup>
           <thead>
@@ -207,6 +207,9 @@ export function LineSheet({
     </div>
   )
 }
+
+/** After the INCI name: function, was, % w/w, g/mL, per kg, in, acts. */
+const columnWidths = [118, 62, 72, 58, 60, 34, 80]
 
 function wasShare(line: TypedLine, remainder: number, before: Map<string, string> | null): string | null {
   if (!before || !line.inciName.trim()) return null

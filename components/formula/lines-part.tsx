@@ -33,7 +33,7 @@ export function LinesPart({ formula, handle, isOpen, totals, phases, checks, bef
   const foot = <TotalRow totals={totals} beforeNumber={before ? (formula.before?.number ?? null) : null} />
   const lines = draft.lines.length ? draft.lines : [emptyLine(`${formula.versionId}-first`, 'A', false)]
   return (
-    <div className="grid gap-x-10 gap-y-8 xl:grid-cols-[minmax(0,1fr)_600px]">
+    <div className="grid gap-x-10 gap-y-8 xl:grid-cols-[minmax(0,1fr)_540px]">
       <div className="flex gap-4">
         <ApartJar amounts={amounts} emulsionType={draft.emulsionType} />
         <div className="min-w-0 flex-1">

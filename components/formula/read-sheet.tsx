@@ -19,8 +19,8 @@ export function ReadSheet({ lines, phases, emulsionType, foot }: Props) {
         <caption className="sr-only">Lines of the formula</caption>
         <colgroup>
           <col />
-          {[132, 20, 84, 60, 66, 56, 4].map((width) => (
-            <col key={width} style={{ width }} />
+          {[132, 20, 84, 60, 66, 56, 4].map((width, index) => (
+            <col key={index} style={{ width }} />
           ))}
         </colgroup>
         <thead>

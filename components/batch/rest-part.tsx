@@ -1,0 +1,63 @@
+'use client'
+
+import type { BatchPage } from '@/lib/batch/queries/get-batch'
+import { gramsText } from '@/lib/batch/rules'
+import { DecisionForm } from './decision-form'
+import { FinishForm } from './finish-form'
+import { TypeTestForm } from './type-test-form'
+
+type Props = { batch: BatchPage; mayWrite: boolean; onSaved: () => void }
+
+/** After making: yield, rest, emulsion type, decision. */
+export function RestPart({ batch, mayWrite, onSaved }: Props) {
+  return (
+    <div className="flex flex-col gap-9">
+      <Facts batch={batch} />
+      {mayWrite && batch.state === 'making' ? <FinishForm batch={batch} onSaved={onSaved} /> : null}
+      {mayWrite && batch.state === 'resting' ? (
+        <TypeTestForm key={batch.version} batch={batch} onSaved={onSaved} />
+      ) : null}
+      {mayWrite && (batch.state === 'resting' || batch.state === 'making') ? (
+        <DecisionForm batch={batch} onSaved={onSaved} />
+      ) : null}
+    </div>
+  )
+}
+
+function Facts({ batch }: { batch: BatchPage }) {
+  const weighedG = batch.weighings.reduce((sum, line) => sum + (line.actualG ?? 0), 0)
+  const facts: [string, string][] = []
+  if (batch.yieldG !== null) {
+    const share = weighedG ? `, ${((100 * batch.yieldG) / weighedG).toFixed(1)} % of what went in` : ''
+    facts.push(['Yield', `${gramsText(batch.yieldG)} g${share}`])
+  }
+  if (batch.fillG !== null)
+    facts.push(['Fill of a jar', `${gramsText(batch.fillG)} g${batch.closure ? `, ${batch.closure}` : ''}`])
+  if (batch.restedHours !== null) facts.push(['Rested', `${Math.floor(batch.restedHours)} h`])
+  if (batch.emulsionTypeFound) {
+    const conductivity =
+      batch.conductivityUsCm === null ? '' : ` (${batch.conductivityUsCm} microsiemens per cm)`
+    const reason = batch.emulsionTypeReason ? `. ${batch.emulsionTypeReason}` : ''
+    facts.push([
+      'Emulsion type',
+      `${batch.emulsionTypeFound} by ${batch.emulsionTypeMethod}${conductivity}, tested by ${batch.testedBy}${reason}`,
+    ])
+  }
+  if (batch.decidedBy)
+    facts.push([
+      'Decision',
+      `${batch.state} by ${batch.decidedBy}${batch.decisionReason ? `. ${batch.decisionReason}` : ''}`,
+    ])
+  if (batch.note) facts.push(['Note', batch.note])
+  if (!facts.length) return null
+  return (
+    <dl className="max-w-[760px]">
+      {facts.map(([name, value]) => (
+        <div key={name} className="grid grid-cols-[140px_1fr] gap-4 border-b border-hair py-2">
+          <dt className="text-soft">{name}</dt>
+          <dd>{value}</dd>
+        </div>
+      ))}
+    </dl>
+  )
+}
