@@ -32,13 +32,19 @@ export async function seed(root, env, say) {
     env,
     onLine: say,
     what: 'Filling the demo',
-    todo: 'The lines above say why. To start without the demo: STILLSTAND_DEMO=off npm start',
+    todo: 'The lines above say why. Without the demo it starts with: STILLSTAND_DEMO=off npm start',
     isLong: true,
   })
   return lines.at(-1) ?? 'filled'
 }
 
-/** Makes, migrates and, when wanted, fills the database of our own cluster. */
+/** Whether the demo was filled in, there are people of another making, or nobody yet. */
+export const demoStateQuery = `select case
+  when exists (select from lab where demo_filled_at is not null) then 'filled'
+  when exists (select from person where not is_system) then 'people'
+  else 'empty' end as state`
+
+/** Makes, migrates and, when wanted, fills the database of our own cluster. Returns whether the demo is in it. */
 export async function prepareOwnDatabase({ cluster, root, env, wantsDemo, step }) {
   const isNew = !(await hasDatabase(cluster, name))
   const database = isNew && wantsDemo ? filling : name
@@ -50,20 +56,16 @@ export async function prepareOwnDatabase({ cluster, root, env, wantsDemo, step }
     await migrate(root, urls)
     return isNew ? 'made and migrated' : 'migrated'
   })
-  if (!wantsDemo) return
-  if (!isNew && !(await isEmpty(cluster))) return
-  await step('Demo', async (say) => {
+  if (!wantsDemo) return false
+  const askState = () => cluster.query(demoStateQuery, database)
+  return fillWhereEmpty(await askState(), step, async (say) => {
     const outcome = await seed(root, urls, say)
     if (database === filling) await cluster.query(`alter database ${filling} rename to ${name}`)
     return outcome
   })
 }
 
-async function isEmpty(cluster) {
-  return (await cluster.query('select not exists (select from person where not is_system)', name)) === 't'
-}
-
-/** Migrates, and fills only when told to, the database that DATABASE_URL names. */
+/** Migrates, and fills only when told to, the database that DATABASE_URL names. Returns whether the demo is in it. */
 export async function prepareGivenDatabase({ root, env, wantsDemo, step }) {
   const needed = wantsDemo ? ['DATABASE_OWNER_URL', 'DATABASE_SEED_URL'] : ['DATABASE_OWNER_URL']
   const missing = needed.filter((variable) => !env[variable])
@@ -78,5 +80,14 @@ export async function prepareGivenDatabase({ root, env, wantsDemo, step }) {
     await migrate(root, env)
     return 'migrated, on the server that DATABASE_URL names'
   })
-  if (wantsDemo) await step('Demo', (say) => seed(root, env, say))
+  if (!wantsDemo) return false
+  const { stdout } = await run(process.execPath, script('lib/cli/demo-state.ts'), { cwd: root, env })
+  return fillWhereEmpty(stdout.trim(), step, (say) => seed(root, env, say))
+}
+
+async function fillWhereEmpty(state, step, fill) {
+  if (state === 'empty') await step('Demo', fill)
+  if (state === 'people')
+    console.log('  There are people in the database already, so the demo is not filled in.')
+  return state !== 'people'
 }

@@ -33,9 +33,9 @@ async function main() {
   const host = process.env['HOST'] || '127.0.0.1'
   const port = await choosePort(host)
   const publicUrl = process.env['PUBLIC_URL'] || `http://127.0.0.1:${port}`
-  const env = await prepareDatabase({ HOST: host, PORT: String(port), PUBLIC_URL: publicUrl })
+  const { env, hasDemo } = await prepareDatabase({ HOST: host, PORT: String(port), PUBLIC_URL: publicUrl })
   if (!(await isBuilt(root))) await step('Build', (say) => build(root, env, say))
-  await serve({ env, host, port, record })
+  await serve({ env, hasDemo, host, port, record })
 }
 
 async function checkEnvironment() {
@@ -64,7 +64,7 @@ async function choosePort(host) {
   )
 }
 
-/** Sees to a database and returns the environment that the programs of the application get. */
+/** Sees to a database; returns the environment that the programs of the application get, and whether it has the demo. */
 async function prepareDatabase(extra) {
   const isGiven = Boolean(process.env['DATABASE_URL'])
   const wantsDemo = isGiven
@@ -72,8 +72,7 @@ async function prepareDatabase(extra) {
     : process.env['STILLSTAND_DEMO'] !== 'off'
   const env = { ...process.env, ...extra, STILLSTAND_DEMO: wantsDemo ? 'on' : 'off' }
   if (isGiven) {
-    await prepareGivenDatabase({ root, env, wantsDemo, step })
-    return env
+    return { env, hasDemo: await prepareGivenDatabase({ root, env, wantsDemo, step }) }
   }
   await step('PostgreSQL', (say) => ensureProgram(postgresProgram, say))
   let cluster
@@ -81,8 +80,8 @@ async function prepareDatabase(extra) {
     cluster = await openOwnCluster(say)
     return `on 127.0.0.1:${cluster.port}, data in ${cluster.folder}`
   })
-  await prepareOwnDatabase({ cluster, root, env, wantsDemo, step })
-  return { ...env, ...databaseUrls(cluster) }
+  const hasDemo = await prepareOwnDatabase({ cluster, root, env, wantsDemo, step })
+  return { env: { ...env, ...databaseUrls(cluster) }, hasDemo }
 }
 
 async function openOwnCluster(say) {
@@ -103,7 +102,7 @@ async function openOwnCluster(say) {
   }
 }
 
-async function serve({ env, host, port, record }) {
+async function serve({ env, hasDemo, host, port, record }) {
   // Held back until the address stands on the screen, so that nothing runs into the steps' lines.
   const held = []
   let print = (line) => held.push(line)
@@ -121,7 +120,7 @@ async function serve({ env, host, port, record }) {
     })
     return `answers on ${host}:${port}, the job worker beside it`
   })
-  const [lines] = await Promise.all([printWelcome(env), serving])
+  const [lines] = await Promise.all([printWelcome(env, hasDemo), serving])
   record.serves(env['PUBLIC_URL'])
   print = console.log
   for (const line of held) print(line)
@@ -131,9 +130,8 @@ async function serve({ env, host, port, record }) {
 }
 
 /** The demo people, or the one-time code with which the first manager of an empty lab is made. */
-async function printWelcome(env) {
-  const print =
-    env['STILLSTAND_DEMO'] === 'on' ? script('lib/cli/seed.ts', '--people') : script('lib/cli/first-code.ts')
+async function printWelcome(env, hasDemo) {
+  const print = hasDemo ? script('lib/cli/seed.ts', '--people') : script('lib/cli/first-code.ts')
   const { stdout } = await run(process.execPath, print, { cwd: root, env, what: 'Asking who may sign in' })
   return stdout.trimEnd().split('\n')
 }

@@ -38,6 +38,11 @@ async function main() {
   let cluster
   await step('Database server of the tests', async (say) => {
     const dataFolder = path.join(root, '.data', 'test')
+    // Where it had to lie outside of the project, nobody would ever remove it.
+    end.with(async () => {
+      if (cluster && !cluster.folder.startsWith(root))
+        await rm(cluster.folder, { recursive: true, force: true })
+    })
     cluster = await openCluster({ dataFolder, isForTests: true, takesOver: true, say, onStarting: end.with })
     return `on 127.0.0.1:${cluster.port}`
   })
