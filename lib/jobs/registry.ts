@@ -1,4 +1,5 @@
 import { z } from '@/lib/http/zod'
+import { jobs as flagJobs } from '@/lib/flag/jobs'
 import { jobs as personJobs } from '@/lib/person/jobs'
 import { makePhotoPreview, previewQueue } from '@/lib/photo/jobs'
 import { jobs as sessionJobs } from '@/lib/session/jobs'
@@ -15,4 +16,5 @@ export const registry: readonly Job[] = [
   ...personJobs,
   ...photoJobs,
   ...caseJobs,
+  ...flagJobs,
 ]
