@@ -3,6 +3,7 @@
 import { useState } from 'react'
 import useSWR from 'swr'
 import { rolesInWords } from '@/components/shell/role-words'
+import { countWord } from '@/components/ui/count-word'
 import { Button } from '@/components/ui/button'
 import { ErrorNote } from '@/components/ui/error-note'
 import { Heading } from '@/components/ui/heading'
@@ -46,8 +47,11 @@ export function People({ ownId, timeZones }: { ownId: string; timeZones: string[
         crumb="Who may do what here"
         headline={
           <>
-            <b>{active.length === 1 ? 'One person' : `${active.length} people`}</b> keep this notebook
-            {waiting.length > 0 ? `, ${waiting.length} not yet answered` : ''}
+            <b>
+              {active.length === 1 ? 'One person keeps' : `${countWord(active.length, true)} people keep`}
+            </b>{' '}
+            this notebook
+            {waiting.length > 0 ? `; ${countWord(waiting.length)} invited, not yet answered` : ''}
           </>
         }
         sentence="A person may hold several roles; nobody changes their own. A closed account keeps its name on what it signed."
@@ -116,7 +120,7 @@ function columnsFor(
   return [
     {
       key: 'initials',
-      title: '',
+      title: <span className="sr-only">Initials</span>,
       width: '4rem',
       cell: (person) => <span className="font-mono font-700">{person.initials}</span>,
     },

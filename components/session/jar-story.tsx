@@ -26,7 +26,7 @@ type Size = {
   pitch: number
   jar: number
   figure: { x: number; y: number; size: number }
-  words: { x: number; y: number; size: number }
+  words: { x: number; y: number; size: number; lines: string[] }
   numbers: number
   front: { y: number; size: number }
 }
@@ -39,7 +39,12 @@ const wide: Size = {
   pitch: 102.5,
   jar: 126,
   figure: { x: 34, y: 230, size: 120 },
-  words: { x: 40, y: 46, size: 17 },
+  words: {
+    x: 40,
+    y: 46,
+    size: 17,
+    lines: ['One cream in one oven, jar by jar,', 'drawn to the layers that were measured'],
+  },
   numbers: 15,
   front: { y: 30, size: 15 },
 }
@@ -52,7 +57,12 @@ const tablet: Size = {
   pitch: 57,
   jar: 76,
   figure: { x: 38, y: 168, size: 62 },
-  words: { x: 40, y: 40, size: 17 },
+  words: {
+    x: 40,
+    y: 40,
+    size: 17,
+    lines: ['One cream in one oven, jar by jar,', 'drawn to the layers that were measured'],
+  },
   numbers: 14,
   front: { y: 40, size: 15 },
 }
@@ -64,10 +74,10 @@ const phone: Size = {
   zero: 32,
   pitch: 31.5,
   jar: 42,
-  figure: { x: 16, y: 104, size: 50 },
-  words: { x: 16, y: 34, size: 16 },
+  figure: { x: 16, y: 124, size: 50 },
+  words: { x: 16, y: 34, size: 16, lines: ['One cream in one', 'oven, jar by jar'] },
   numbers: 13,
-  front: { y: 92, size: 14 },
+  front: { y: 34, size: 15 },
 }
 
 /** What the product is about, in one drawing: a cream in one oven, jar by jar, until it comes apart. */
@@ -95,14 +105,11 @@ function Drawing({ size, className }: { size: Size; className: string }) {
       <text x={at(frontWeek) + 12} y={front.y} fontSize={front.size} style={{ fill: 'var(--alarm)' }}>
         {size === phone ? 'It has left its band' : 'Past this line it has left its band'}
       </text>
-      <text x={words.x} y={words.y} fontSize={words.size}>
-        One cream in one oven, jar by jar,
-      </text>
-      {size === phone ? null : (
-        <text x={words.x} y={words.y + words.size * 1.42} fontSize={words.size}>
-          drawn to the layers measured
+      {words.lines.map((line, index) => (
+        <text key={line} x={words.x} y={words.y + index * words.size * 1.42} fontSize={words.size}>
+          {line}
         </text>
-      )}
+      ))}
       <text
         x={figure.x}
         y={figure.y}

@@ -19,7 +19,7 @@ export function PasswordField(props: Omit<FieldProps, 'type' | 'end'>) {
           aria-pressed={isShown}
           aria-label={isShown ? 'Hide the password' : 'Show the password'}
           onClick={() => setShown(!isShown)}
-          className="-my-2 min-h-11 shrink-0 font-600"
+          className="-my-2 min-h-11 shrink-0 text-[length:var(--label-type)] font-600"
         >
           {isShown ? 'hide' : 'show'}
         </button>

@@ -70,7 +70,7 @@ export function SignInForm({ to }: { to: string }) {
         Sign in
       </Button>
       <ErrorNote error={error} />
-      <p className="text-14 text-soft">
+      <p className="hidden text-14 text-soft sm:block">
         After eight quiet hours you are signed out; what you have typed stays.
       </p>
     </form>

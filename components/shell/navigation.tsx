@@ -35,7 +35,7 @@ export function Navigation({
             key={place.href}
             href={place.href}
             aria-current={isHere ? 'page' : undefined}
-            className={`relative flex h-11 shrink-0 items-end pb-[11px] -outline-offset-2 ${
+            className={`relative flex h-11 shrink-0 items-end pb-3 -outline-offset-2 ${
               isHere
                 ? 'font-750 after:absolute after:-inset-x-0.5 after:bottom-0 after:h-1 after:bg-ink'
                 : 'hover:underline hover:underline-offset-4'

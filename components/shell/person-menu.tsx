@@ -40,7 +40,7 @@ export function PersonMenu({ who }: { who: Who }) {
         data-screen-only
         className="relative shrink-0 whitespace-nowrap after:absolute after:-inset-x-2 after:-inset-y-3 after:content-[''] hover:underline hover:underline-offset-4"
       >
-        <b>{who.initials}</b>, {rolesInWords(who.roles)}
+        {who.initials}, {rolesInWords(who.roles)}
       </DropdownMenu.Trigger>
       <DropdownMenu.Portal>
         <DropdownMenu.Content

@@ -26,24 +26,21 @@ function DeskShell({ who, places, labName, day, isDemo, path, children }: Props 
   return (
     <div className="flex min-h-dvh flex-col">
       <SkipLink />
-      <header
-        data-screen-only
-        className="relative border-b border-ink px-4 sm:px-10 xl:h-[42px] print:border-0"
-      >
-        <div className="flex flex-wrap items-end justify-between gap-x-8 xl:flex-nowrap">
+      <header data-screen-only className="border-b border-rule xl:h-[42px] xl:border-ink print:border-0">
+        <div className="flex flex-wrap items-end justify-between xl:flex-nowrap xl:px-10">
           <Link
             href={home?.href ?? '/'}
-            className="flex h-[42px] shrink-0 items-end gap-3 pb-0 -outline-offset-2"
+            className="flex h-[41px] flex-1 items-end gap-3 border-b border-ink pl-4 -outline-offset-2 sm:pl-10 xl:flex-none xl:border-0 xl:pl-0"
           >
-            <Logo className="translate-y-px" />
-            <span className="pb-[6px] text-19 font-720 tracking-[-0.01em]">Stillstand</span>
+            <Logo />
+            <span className="pb-[1px] text-19 font-720 tracking-[-0.01em]">Stillstand</span>
           </Link>
           <Navigation
             places={places}
             path={path}
-            className="order-last -mb-[3px] w-full xl:order-none xl:ml-4 xl:w-auto xl:flex-1"
+            className="order-last -mb-[3px] w-full px-4 sm:px-10 xl:order-none xl:mr-8 xl:ml-[23px] xl:w-auto xl:flex-1 xl:px-[22px]"
           />
-          <div className="pb-[9px] text-15">
+          <div className="flex h-[41px] items-end border-b border-ink pb-[3px] pr-4 text-15 sm:pr-10 xl:border-0 xl:pr-0">
             <PersonMenu who={who} />
           </div>
         </div>
@@ -85,7 +82,7 @@ function BenchShell({ who, places, isWhole, children }: Props & { isWhole: boole
             className="flex h-16 items-end gap-3 -outline-offset-2"
             aria-label="Stillstand, Bench"
           >
-            <Logo className="translate-y-px" />
+            <Logo />
             <span className="pb-4 text-19 font-720">Bench</span>
           </Link>
           <span className="flex h-16 items-end gap-6">

@@ -53,7 +53,10 @@ export function Ledger<Row>({ caption, columns, rows, rowKey, isQuiet, empty, fo
           {rows.map((row) => (
             <tr key={rowKey(row)} className={`border-b border-hair ${isQuiet?.(row) ? 'text-soft' : ''}`}>
               {columns.map((column) => (
-                <td key={column.key} className={`h-9 px-2 py-1 first:pl-0 last:pr-0 ${cellClass(column)}`}>
+                <td
+                  key={column.key}
+                  className={`h-11 px-2 py-1 sm:h-9 first:pl-0 last:pr-0 ${cellClass(column)}`}
+                >
                   {column.cell(row)}
                 </td>
               ))}

@@ -11,7 +11,9 @@ export default async function ResetPage() {
   await visitor()
   return (
     <>
-      <Masthead />
+      <header>
+        <Masthead />
+      </header>
       <AuthColumn
         title={
           <>

@@ -14,7 +14,9 @@ export default async function SetupPage() {
   if (await isSetUp(db)) redirect('/sign-in')
   return (
     <>
-      <Masthead claim="From the bench batch to a shelf life that QA has signed." />
+      <header>
+        <Masthead claim="From the bench batch to a shelf life that QA has signed." />
+      </header>
       <AuthColumn
         title={
           <>

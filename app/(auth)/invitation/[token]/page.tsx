@@ -18,7 +18,9 @@ export default async function InvitationPage({ params }: { params: Promise<{ tok
   const lab = await findLab(db)
   return (
     <>
-      <Masthead />
+      <header>
+        <Masthead />
+      </header>
       {person ? (
         <AuthColumn
           title={

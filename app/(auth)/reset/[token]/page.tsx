@@ -16,7 +16,9 @@ export default async function SetPasswordPage({ params }: { params: Promise<{ to
   const person = await findReset(db, token)
   return (
     <>
-      <Masthead />
+      <header>
+        <Masthead />
+      </header>
       {person ? (
         <AuthColumn
           title={
