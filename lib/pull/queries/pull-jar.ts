@@ -41,6 +41,7 @@ export async function findPullJar(db: Db | Trx, pullJarId: string, instrumentIds
       'opener.name as openerName',
       'opener.initials as openerInitials',
       'pj.takenAt',
+      'pj.restUntil',
       'pj.closedBy',
       'pj.closedAt',
       'closer.name as closerName',

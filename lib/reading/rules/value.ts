@@ -9,7 +9,7 @@ import { massChangePercent } from './mass-change'
 
 /** What must be known of the jar and the protocol to make a value of what was typed. */
 export type ValueContext = {
-  planned: PlannedAttribute | null
+  planned: Pick<PlannedAttribute, 'viscosity'> | null
   jar: { tareG: number | null; grossG: number | null; fillHeightMm: number | null }
   /** Of the instrument that was used. */
   spindles: { name: string; constant: number }[]

@@ -83,11 +83,21 @@ export function repeatabilitySd(
   return kind === 'relative' ? ofMethod * Math.abs(initial) : ofMethod
 }
 
+/**
+ * Replicates of the batch's own initial. Where the protocol asks for none (an absolute range), the first reading of
+ * the batch stands for it.
+ */
 export function initialOf(frame: Frame, batchId: string, attribute: AttributeKey): number[] {
-  const values = frame.readings
-    .filter((r) => r.studyStationId === null && r.batchId === batchId && r.attribute === attribute)
-    .flatMap((r) => (r.value === null ? [] : [r.value]))
-  return values.length === 0 && startsAtZero.has(attribute) ? [0] : values
+  const own = frame.readings.filter(
+    (r) => r.batchId === batchId && r.attribute === attribute && r.value !== null,
+  )
+  const initial = own.filter((r) => r.studyStationId === null)
+  if (initial.length > 0) return initial.map((r) => r.value!)
+  if (startsAtZero.has(attribute)) return [0]
+  const planned = frame.study.plan.attributes.find((one) => one.attribute === attribute)
+  const [first] = own
+  if (planned?.tolerance.kind !== 'range' || !first) return []
+  return own.filter((r) => r.pullJarId === first.pullJarId).map((r) => r.value!)
 }
 
 function isHighInternalPhase(batch: FrameBatch): boolean {

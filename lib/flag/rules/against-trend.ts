@@ -1,0 +1,99 @@
+import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { trendAt } from '@/lib/science/trend'
+import type { Band } from '@/lib/science/series'
+import type { ReadingWithTrend } from '../queries/one'
+
+const weekMs = 604_800_000
+
+export type AgainstTrend = {
+  readingIds: string[]
+  attribute: AttributeKey
+  label: string
+  unit: string
+  value: number
+  /** Where its own trend was that day; the latest counted value before it where there is no trend. */
+  expected: number | null
+  difference: number | null
+  /** The same in percent of the initial, for one axis over several series. */
+  differencePercent: number | null
+  /** Scatter of the series about its trend, in percent of the initial. */
+  scatterPercent: number | null
+  initial: number | null
+  band: Band | null
+  isBeyond: boolean
+  standing: string | null
+  studyCode: string
+  batchCode: string
+  stationName: string
+  temperatureC: number | null
+  isFreezeThaw: boolean
+  jarCode: string | null
+  measuredAt: string
+  /** The series that the flag is about. */
+  isFlagged: boolean
+}
+
+/** Each series' reading against where that series leads, replicates of a jar as one mean. */
+export function againstTrend(
+  rows: readonly ReadingWithTrend[],
+  flag: { studyCode: string; batchId: string; studyStationId: string | null; attribute: string },
+): AgainstTrend[] {
+  const groups = new Map<string, ReadingWithTrend[]>()
+  for (const row of rows) {
+    const key = [row.attribute, row.jarCode, row.studyStationId, row.batchId].join(' ')
+    groups.set(key, [...(groups.get(key) ?? []), row])
+  }
+  return [...groups.values()].flatMap((group) => {
+    const values = group.flatMap((row) => (row.value === null ? [] : [row.value]))
+    const [row] = group
+    if (!row || values.length === 0) return []
+    return [compare(row, group, values.reduce((sum, value) => sum + value, 0) / values.length, flag)]
+  })
+}
+
+function compare(
+  row: ReadingWithTrend,
+  group: ReadingWithTrend[],
+  value: number,
+  flag: { studyCode: string; batchId: string; studyStationId: string | null; attribute: string },
+): AgainstTrend {
+  const attribute = attributeOf(row.attribute as AttributeKey)
+  const { finding } = row
+  const weeks = (Date.parse(row.measuredAt) - Date.parse(row.startedAt)) / weekMs
+  const before = finding?.points.findLast((point) => point.counted && point.time < weeks - 0.1)
+  const expected = finding?.trend ? trendAt(finding.trend, weeks) : (before?.mean ?? null)
+  const initial = finding?.initial ?? null
+  const difference = expected === null ? null : value - expected
+  const percentOf = (size: number | null) =>
+    size === null || !initial ? null : (100 * size) / Math.abs(initial)
+  const band = finding?.band ?? null
+  return {
+    readingIds: group.map((one) => one.id),
+    attribute: attribute.key as AttributeKey,
+    label: attribute.label,
+    unit: attribute.unit,
+    value,
+    expected,
+    difference,
+    differencePercent: percentOf(difference),
+    scatterPercent: percentOf(finding?.trend?.sd ?? null),
+    initial,
+    band,
+    isBeyond:
+      band !== null &&
+      ((band.lower !== null && value < band.lower) || (band.upper !== null && value > band.upper)),
+    standing: row.standing,
+    studyCode: row.studyCode,
+    batchCode: row.batchCode,
+    stationName: row.stationName,
+    temperatureC: row.temperatureC,
+    isFreezeThaw: row.isFreezeThaw,
+    jarCode: row.jarCode,
+    measuredAt: row.measuredAt,
+    isFlagged:
+      row.studyCode === flag.studyCode &&
+      row.batchId === flag.batchId &&
+      row.studyStationId === flag.studyStationId &&
+      row.attribute === flag.attribute,
+  }
+}

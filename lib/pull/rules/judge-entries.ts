@@ -1,0 +1,128 @@
+import { AppError } from '@/lib/http/errors'
+import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { conditionDoubts, cycleDoubts, valueDoubts, type EntryDoubt } from '@/lib/reading/rules/entry-doubts'
+import type { Frame } from '@/lib/series/queries/frame'
+import { seriesUnits } from '@/lib/series/rules/input'
+import { sentenceContext } from '@/lib/series/rules/spoken'
+import { dayIn } from '@/lib/study/rules/calendar'
+import type { PullJar } from '../queries/pull-jar'
+import { missingAttributes, type ReadEntry } from './read-entries'
+
+const weekMs = 604_800_000
+
+/** One thing that the person is asked about before it is taken. */
+export type Question = { field: string; attribute: string; readingId: string | null; sentence: string }
+export type Doubted = Map<string, EntryDoubt[]>
+
+type Judged = { doubts: Doubted; questions: Question[] }
+
+/** What speaks against each entry (by its id), and what of that the person has to say is so. */
+export function judgeEntries(
+  jar: PullJar,
+  frame: Frame,
+  entries: readonly ReadEntry[],
+  measuredAt: string,
+): Judged {
+  const doubts: Doubted = new Map()
+  const questions: Question[] = []
+  const keys = new Set<AttributeKey>(entries.map(({ entry }) => entry.attribute))
+  const units = seriesUnits(frame, keys, [])
+  const station = frame.study.stations.find((one) => one.id === jar.studyStationId)!
+  const common = jar.isFreezeThaw ? cycleDoubts(jar, jar.cycleHalves) : []
+  for (const key of keys) {
+    const own = entries.filter(({ entry }) => entry.attribute === key)
+    const unit = units.find(
+      (one) => one.batch.id === jar.batchId && one.station.id === jar.studyStationId && one.attribute === key,
+    )
+    const ofValue = unit
+      ? valueDoubts(
+          { ...unit.input, readings: unit.input.readings.filter((reading) => reading.day !== jar.dueOn) },
+          {
+            time: Math.max(0, (Date.parse(measuredAt) - Date.parse(frame.study.startedAt)) / weekMs),
+            values: own.map(({ read }) => read.value),
+            isRepeat: jar.asks === 'repeat',
+            ...weakestTorque(own),
+          },
+          sentenceContext(frame.study, station, key),
+        )
+      : []
+    for (const { entry, path, instrument, read } of own) {
+      const found = [
+        ...ofValue.map(({ reason, sentence }) => ({ reason, sentence })),
+        ...conditionDoubts(
+          usedIn(read.detail, instrument),
+          initialIn(frame, jar, key),
+          dayIn(frame.study.zone, measuredAt),
+        ),
+        ...common,
+      ]
+      if (found.length > 0) doubts.set(entry.id, found)
+      if (entry.isConfirmed) continue
+      for (const { sentence } of ofValue) {
+        questions.push({ field: `${path}.typed`, attribute: key, readingId: entry.id, sentence })
+      }
+    }
+  }
+  return { doubts, questions }
+}
+
+/** Asks once, about everything at a time: what is unlikely, and what is missing. */
+export function askFirst(
+  jar: PullJar,
+  questions: Question[],
+  input: { readings: readonly ReadEntry['entry'][]; leaveOut: readonly string[] },
+): void {
+  const missing = missingAttributes(jar, input.readings, input.leaveOut).map((key): Question => {
+    const label = attributeOf(key as AttributeKey).label
+    return {
+      field: `missing.${key}`,
+      attribute: key,
+      readingId: null,
+      sentence: `${label} is not read yet. Read it, or say that it is left out.`,
+    }
+  })
+  const all = [...questions, ...missing]
+  const [first] = all
+  if (!first) return
+  const more = all.length > 1 ? ` ${all.length - 1} more to confirm.` : ''
+  throw new AppError(409, 'confirm', `${first.sentence} Is it so?${more}`, {
+    fields: Object.fromEntries(all.map(({ field, sentence }) => [field, sentence])),
+    detail: { questions: all },
+  })
+}
+
+function weakestTorque(entries: readonly ReadEntry[]): { torquePercent?: number } {
+  const torques = entries.flatMap(({ read }) =>
+    typeof read.detail['torquePercent'] === 'number' ? [read.detail['torquePercent']] : [],
+  )
+  if (torques.length === 0) return {}
+  return { torquePercent: torques.find((torque) => torque > 100) ?? Math.min(...torques) }
+}
+
+function usedIn(detail: Record<string, unknown>, instrument: ReadEntry['instrument']) {
+  return { instrument, ...conditionsIn(detail) }
+}
+
+function initialIn(frame: Frame, jar: PullJar, attribute: string) {
+  const initial = frame.readings.find(
+    (row) => row.studyStationId === null && row.batchId === jar.batchId && row.attribute === attribute,
+  )
+  const found = conditionsIn(initial?.detail ?? {})
+  const torque = initial?.detail['torque']
+  return torque && typeof torque === 'object'
+    ? {
+        ...found,
+        ...conditionsIn(torque as Record<string, unknown>),
+        sampleTemperatureC: found.sampleTemperatureC,
+      }
+    : found
+}
+
+function conditionsIn(detail: Record<string, unknown>) {
+  const number = (key: string) => (typeof detail[key] === 'number' ? detail[key] : null)
+  return {
+    spindle: typeof detail['spindle'] === 'string' ? detail['spindle'] : null,
+    rpm: number('rpm'),
+    sampleTemperatureC: number('sampleTemperatureC'),
+  }
+}

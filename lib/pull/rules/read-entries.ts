@@ -1,0 +1,85 @@
+import { refuse } from '@/lib/http/errors'
+import type { PlannedAttribute } from '@/lib/protocol/schema'
+import { plannedFor } from '@/lib/bench/rules'
+import { attributeOf } from '@/lib/reading/schema/attributes'
+import type { Entry } from '@/lib/reading/schema/entry'
+import { ImpossibleEntry, valueOf, type EntryValue } from '@/lib/reading/rules/value'
+import type { Frame } from '@/lib/series/queries/frame'
+import type { PullJar, UsedInstrument } from '../queries/pull-jar'
+
+export type ReadEntry = {
+  entry: Entry
+  /** Where in the request it stands: `readings.2`. */
+  path: string
+  planned: PlannedAttribute
+  instrument: UsedInstrument | null
+  read: EntryValue
+}
+
+/** Values of all fields of a jar, or one refusal that names each field that cannot be so. */
+export function readEntries(jar: PullJar, frame: Frame, entries: readonly Entry[]): ReadEntry[] {
+  const planned = plannedFor({ asks: jar.asks, attribute: jar.attribute, plan: jar.plan })
+  const fields: Record<string, string> = {}
+  const seen = new Set<string>()
+  const read = entries.flatMap((entry, index): ReadEntry[] => {
+    const path = `readings.${index}`
+    const asked = planned.find((one) => one.attribute === entry.attribute)
+    const label = attributeOf(entry.attribute).label
+    const name = `${entry.attribute} ${entry.replicate}`
+    if (!asked) {
+      fields[`${path}.typed`] = `${label} is not asked of this jar. Leave it out.`
+      return []
+    }
+    if (seen.has(name)) {
+      fields[`${path}.replicate`] =
+        `${label} stands twice as replicate ${entry.replicate}. Number them 1, 2, 3.`
+      return []
+    }
+    seen.add(name)
+    const instrument = jar.instruments.find((one) => one.id === entry.instrumentId) ?? null
+    if (entry.instrumentId && !instrument) {
+      fields[`${path}.instrumentId`] = 'There is no such instrument. Choose one from the list.'
+      return []
+    }
+    try {
+      const value = valueOf(entry, {
+        planned: asked,
+        jar: { ...jar, fillHeightMm: jar.fillHeightMm ?? jar.plan.fillHeightMm },
+        spindles: instrument?.spindles ?? [],
+        last: lastValue(frame, jar, entry),
+      })
+      return [{ entry, path, planned: asked, instrument, read: value }]
+    } catch (error) {
+      if (!(error instanceof ImpossibleEntry)) throw error
+      fields[`${path}.${error.field}`] = error.sentence
+      return []
+    }
+  })
+  const [first] = Object.values(fields)
+  if (first !== undefined) {
+    const more = Object.keys(fields).length - 1
+    throw refuse.invalid(more > 0 ? `${first} ${more} more like it.` : first, fields)
+  }
+  return read
+}
+
+/** What the protocol asks for, is not there, and was not said to be left out. */
+export function missingAttributes(
+  jar: PullJar,
+  entries: readonly Entry[],
+  leaveOut: readonly string[],
+): string[] {
+  return plannedFor({ asks: jar.asks, attribute: jar.attribute, plan: jar.plan })
+    .map((planned) => planned.attribute)
+    .filter((key) => !leaveOut.includes(key) && !entries.some((entry) => entry.attribute === key))
+}
+
+function lastValue(frame: Frame, jar: PullJar, entry: Entry): number | null {
+  const row = frame.readings.findLast(
+    (one) =>
+      one.attribute === entry.attribute &&
+      one.batchId === jar.batchId &&
+      (one.studyStationId === jar.studyStationId || one.studyStationId === null),
+  )
+  return row?.value ?? null
+}
