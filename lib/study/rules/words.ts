@@ -56,7 +56,7 @@ function threeFigures(value: number): string {
 }
 
 /** Thousands with a thin gap, from 10 000 on as in 1200 there is nothing to miscount. */
-function grouped(text: string): string {
+export function grouped(text: string): string {
   const [whole = '', rest] = text.split('.')
   const gapped = whole.length > 4 ? whole.replace(/\B(?=(\d{3})+(?!\d))/g, '\u2009') : whole
   return rest === undefined ? gapped : `${gapped}.${rest}`

@@ -1,0 +1,32 @@
+import type { Metadata } from 'next'
+import { StartStudyForm } from '@/components/study/start-study-form'
+import { listClients } from '@/lib/client/queries'
+import { page } from '@/lib/http/page'
+import { listInstruments } from '@/lib/instrument/queries'
+import { listProtocols } from '@/lib/protocol/queries'
+import { listStations } from '@/lib/station/queries'
+import { listReleasedBatches } from '@/lib/study/queries/batches'
+
+export const permission = 'study.write'
+export const metadata: Metadata = { title: 'Start a study' }
+
+type Props = { searchParams: Promise<Record<string, string | string[] | undefined>> }
+
+export default async function NewStudyPage({ searchParams }: Props) {
+  const { actor, db } = await page(permission)
+  const { batch, protocol } = await searchParams
+  const offer = {
+    batches: await listReleasedBatches(db),
+    protocols: await listProtocols(db, actor),
+    stations: await listStations(db, actor),
+    clients: await listClients(db, actor),
+    instruments: await listInstruments(db, actor),
+  }
+  return (
+    <StartStudyForm
+      offer={offer}
+      batchCode={typeof batch === 'string' ? batch : null}
+      protocolCode={typeof protocol === 'string' ? protocol : null}
+    />
+  )
+}

@@ -1,0 +1,138 @@
+'use client'
+
+import Link from 'next/link'
+import { useRouter } from 'next/navigation'
+import { useState } from 'react'
+import { Button } from '@/components/ui/button'
+import { Empty } from '@/components/ui/empty'
+import { Heading } from '@/components/ui/heading'
+import { Ledger } from '@/components/ui/ledger'
+import { Section } from '@/components/ui/section'
+import { isOverdue } from '@/lib/calibration/rules'
+import type { InstrumentPage } from '@/lib/instrument/queries'
+import { dayIn, spokenDay } from '@/lib/study/rules/calendar'
+import { CalibrationDialog } from './calibration-dialog'
+import { InstrumentDialog } from './instrument-dialog'
+
+type Props = {
+  instrument: InstrumentPage
+  today: string
+  timeZone: string
+  mayWrite: boolean
+  mayCalibrate: boolean
+}
+
+/** One instrument with every calibration it had; none is ever changed. */
+export function InstrumentView({ instrument, today, timeZone, mayWrite, mayCalibrate }: Props) {
+  const router = useRouter()
+  const [open, setOpen] = useState<'change' | 'calibrate' | null>(null)
+  const [newest] = instrument.calibrations
+  const close = () => setOpen(null)
+  return (
+    <>
+      <Heading
+        crumb={
+          <>
+            <Link href="/instruments">Instruments</Link>, {instrument.code}, {instrument.name}
+          </>
+        }
+        headline={<Headline instrument={instrument} today={today} />}
+        sentence={newest?.detail.sentence}
+        acts={
+          <>
+            {mayCalibrate && instrument.isActive ? (
+              <Button kind="primary" onClick={() => setOpen('calibrate')}>
+                Calibrate
+              </Button>
+            ) : null}
+            {mayWrite ? <Button onClick={() => setOpen('change')}>Change the instrument</Button> : null}
+          </>
+        }
+      />
+      <div className="mt-6 grid gap-8">
+        {instrument.spindles.length > 0 ? (
+          <Section title="Spindles">
+            <Ledger
+              caption="Spindles"
+              rows={instrument.spindles}
+              rowKey={(row) => row.name}
+              columns={[
+                { key: 'name', title: 'spindle', cell: (row) => row.name },
+                { key: 'constant', title: 'constant', align: 'right', cell: (row) => row.constant },
+                {
+                  key: 'factor',
+                  title: 'mPa·s a % at 10 rpm',
+                  align: 'right',
+                  cell: (row) => row.constant / 10,
+                },
+              ]}
+            />
+          </Section>
+        ) : null}
+        <Section title="Calibrations">
+          <Ledger
+            caption="Calibrations, newest first"
+            rows={instrument.calibrations}
+            rowKey={(row) => row.id}
+            empty={
+              <Empty
+                title="Not calibrated yet"
+                sentence="Readings of an instrument without a calibration carry a doubt."
+              />
+            }
+            columns={[
+              { key: 'at', title: 'on', cell: (row) => spokenDay(dayIn(timeZone, row.calibratedAt)) },
+              {
+                key: 'result',
+                title: 'result',
+                cell: (row) => (
+                  <span className={row.result === 'doubtful' ? 'font-650 text-alarm' : ''}>{row.result}</span>
+                ),
+              },
+              { key: 'sentence', title: 'what it showed', cell: (row) => row.detail.sentence ?? '' },
+              { key: 'due', title: 'held until', from: 'tablet', cell: (row) => spokenDay(row.dueOn) },
+              { key: 'by', title: 'by', cell: (row) => row.initials },
+              { key: 'note', title: 'note', from: 'desk', cell: (row) => row.note },
+            ]}
+          />
+        </Section>
+      </div>
+      {open === 'change' ? (
+        <InstrumentDialog instrument={instrument} onClose={close} onDone={() => router.refresh()} />
+      ) : null}
+      {open === 'calibrate' ? (
+        <CalibrationDialog
+          instrument={instrument}
+          today={today}
+          onClose={close}
+          onDone={() => router.refresh()}
+        />
+      ) : null}
+    </>
+  )
+}
+
+function Headline({ instrument, today }: { instrument: InstrumentPage; today: string }) {
+  const [newest] = instrument.calibrations
+  if (!instrument.isActive) return <>{instrument.code} is out of use</>
+  if (!newest) return <>{instrument.code} was never calibrated</>
+  if (newest.result === 'doubtful') {
+    return (
+      <>
+        {instrument.code} is <b>in doubt</b>
+      </>
+    )
+  }
+  if (isOverdue(newest, today)) {
+    return (
+      <>
+        {instrument.code} is <b>overdue</b> since {spokenDay(newest.dueOn)}
+      </>
+    )
+  }
+  return (
+    <>
+      {instrument.code} is <b>good</b> until {spokenDay(newest.dueOn)}
+    </>
+  )
+}

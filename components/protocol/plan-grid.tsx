@@ -1,0 +1,124 @@
+'use client'
+
+import { Drawn } from '@/components/marks/drawn'
+import { heatLine } from '@/components/marks/heat'
+import { jarShapes } from '@/components/marks/jar-shapes'
+import { moveShapes } from '@/components/marks/place'
+import { StationLabel } from '@/components/ui/station-label'
+import { pullLabel, stationName, weeksOfPlan } from '@/lib/protocol/rules/plan'
+import type { PlannedStation, ProtocolPlan } from '@/lib/protocol/schema'
+
+type Props = {
+  plan: ProtocolPlan
+  /** Present while the plan is a draft: presses put a pull in or take it out. */
+  onToggle?: (station: number, week: number) => void
+}
+
+/** The plan as it will stand: each station a shelf, a jar at each of its time points. */
+export function PlanGrid({ plan, onToggle }: Props) {
+  const weeks = weeksOfPlan(plan)
+  if (plan.stations.length === 0) return <p className="text-soft">No station yet.</p>
+  return (
+    <div className="overflow-x-auto">
+      <table className="border-collapse text-15">
+        <caption className="sr-only">Stations by time points</caption>
+        <thead>
+          <tr>
+            <th scope="col" className="w-[130px] pb-1 text-left text-13 font-430 text-soft">
+              {plan.endWeeks > 52 ? 'month' : 'week'}
+            </th>
+            {weeks.map((week) => (
+              <th key={week} scope="col" className="min-w-[44px] pb-1 text-center font-650">
+                {plan.endWeeks > 52 && week % 13 === 0 ? (week / 13) * 3 : week}
+              </th>
+            ))}
+            <th scope="col" className="pb-1 pl-4 text-left text-13 font-430 whitespace-nowrap text-soft">
+              jars a batch
+            </th>
+          </tr>
+        </thead>
+        <tbody>
+          {plan.stations.map((station, index) => (
+            <tr key={index}>
+              <th scope="row" className="h-[58px] pr-3 text-left align-bottom" style={shelf(station)}>
+                <StationLabel
+                  celsius={station.kind === 'temperature' ? station.temperatureC : null}
+                  name={station.kind === 'transport' ? 'on road' : undefined}
+                  size={34}
+                />
+              </th>
+              {weeks.map((week) => (
+                <td key={week} className="h-[58px] p-0 text-center align-bottom" style={shelf(station)}>
+                  <Place station={station} index={index} week={week} plan={plan} onToggle={onToggle} />
+                </td>
+              ))}
+              <td className="pl-4 align-bottom text-14 whitespace-nowrap text-soft">{jarsText(station)}</td>
+            </tr>
+          ))}
+        </tbody>
+      </table>
+    </div>
+  )
+}
+
+function Place({
+  station,
+  index,
+  week,
+  plan,
+  onToggle,
+}: {
+  station: PlannedStation
+  index: number
+  week: number
+  plan: ProtocolPlan
+  onToggle?: Props['onToggle']
+}) {
+  const isPulled = station.timePoints.includes(week)
+  const label = `${stationName(station, index)}, ${isPulled ? pullLabel(station, week, plan.endWeeks) : `week ${week}`}`
+  const drawing = (
+    <svg viewBox="-16 -36 32 37" width={32} height={37} className="mx-auto block" aria-hidden>
+      {isPulled || onToggle ? (
+        <Drawn shapes={moveShapes(jarShapes({ height: 32, state: isPulled ? 'drawn' : 'planned' }), 0, 0)} />
+      ) : null}
+    </svg>
+  )
+  if (!onToggle) {
+    return isPulled ? (
+      <span aria-label={label} role="img" className="block">
+        {drawing}
+      </span>
+    ) : null
+  }
+  return (
+    <button
+      type="button"
+      aria-pressed={isPulled}
+      aria-label={label}
+      className="block min-h-[44px] w-full min-w-[44px] content-end"
+      onClick={() => onToggle(index, week)}
+    >
+      {drawing}
+    </button>
+  )
+}
+
+function shelf(station: PlannedStation) {
+  const isCold = station.temperatureC === null
+  return {
+    borderBottom: isCold
+      ? '1.5px dashed var(--ink)'
+      : `${heatLine(station.temperatureC!)}px solid var(--ink)`,
+  }
+}
+
+function jarsText({
+  watchJars,
+  measuringJarsPerPull,
+  timePoints,
+  spares,
+  voice,
+  windowDays,
+}: PlannedStation): string {
+  return `${watchJars} watch, ${measuringJarsPerPull * timePoints.length} measuring, ${spares} spare; ${voice}, window ${windowDays} d`
+}

@@ -1,0 +1,166 @@
+'use client'
+
+import Link from 'next/link'
+import { useRouter } from 'next/navigation'
+import { useState } from 'react'
+import { Button } from '@/components/ui/button'
+import { Empty } from '@/components/ui/empty'
+import { Heading } from '@/components/ui/heading'
+import { StationLabel } from '@/components/ui/station-label'
+import { heatLine } from '@/components/marks/heat'
+import type { StationRow } from '@/lib/station/queries'
+import { sideOf } from '@/lib/station/rules'
+import { dayIn, spokenDay } from '@/lib/study/rules/calendar'
+import { capital, numberWord } from '@/lib/study/rules/words'
+import { StationDialog } from './station-dialog'
+import { TemperatureDialog } from './temperature-dialog'
+
+type Props = { stations: StationRow[]; mayWrite: boolean; mayLog: boolean; timeZone: string }
+
+/** The lab's stations in the order of the walk, each a shelf as heavy as it is hot. */
+export function StationList({ stations, mayWrite, mayLog, timeZone }: Props) {
+  const router = useRouter()
+  const [isAdding, setIsAdding] = useState(false)
+  const [logged, setLogged] = useState<StationRow | null>(null)
+  const outside = stations.filter(
+    (station) => station.lastC !== null && sideOf(station, station.lastC) !== null,
+  )
+  const add = mayWrite ? (
+    <Button kind="primary" onClick={() => setIsAdding(true)}>
+      Add a station
+    </Button>
+  ) : undefined
+  return (
+    <>
+      <Heading
+        crumb="Stations, in the order of the walk"
+        headline={
+          stations.length === 0 ? (
+            'No station is here yet'
+          ) : outside.length === 0 ? (
+            <>
+              <b>Every station</b> was inside its limits when last read
+            </>
+          ) : (
+            <>
+              <b>
+                {capital(numberWord(outside.length))} of {stations.length}
+              </b>{' '}
+              {outside.length === 1 ? 'station is' : 'stations are'} outside{' '}
+              {outside.length === 1 ? 'its' : 'their'} limits
+            </>
+          )
+        }
+        sentence={
+          outside.length > 0
+            ? `${outside.map((one) => one.name).join(', ')}: look at the record, then at the jars.`
+            : undefined
+        }
+        acts={stations.length > 0 ? add : undefined}
+      />
+      {stations.length === 0 ? (
+        <Empty
+          title="Where jars will stand"
+          sentence="An oven, a cabinet, a refrigerator: what each keeps, how many jars it holds, and what to mind there."
+          act={add}
+        />
+      ) : (
+        <ul className="mt-4">
+          {stations.map((station) => (
+            <li key={station.id} className={station.isActive ? '' : 'text-soft'}>
+              <div className="flex flex-wrap items-end gap-x-6 gap-y-1 pt-5 pb-1.5">
+                <span className="w-[130px]">
+                  <StationLabel
+                    celsius={station.kind === 'temperature' ? station.temperatureC : null}
+                    name={station.kind === 'transport' ? 'on road' : undefined}
+                    size={44}
+                  />
+                </span>
+                <Link
+                  href={`/stations/${station.id}`}
+                  className="min-w-[180px] text-19 font-650 underline-offset-4 hover:underline"
+                >
+                  {station.name}
+                </Link>
+                <LastRead station={station} timeZone={timeZone} />
+                <span className="min-w-[150px]">
+                  {station.takenPlaces} of {station.shelves * station.placesPerShelf} places taken
+                </span>
+                {mayLog && station.isActive ? (
+                  <Button
+                    className="ml-auto"
+                    aria-label={`Log the temperature of ${station.name}`}
+                    onClick={() => setLogged(station)}
+                  >
+                    Log the temperature
+                  </Button>
+                ) : null}
+              </div>
+              <hr
+                className="border-0"
+                style={{
+                  borderTop:
+                    station.temperatureC === null
+                      ? '1.5px dashed var(--ink)'
+                      : `${heatLine(station.temperatureC)}px solid var(--ink)`,
+                }}
+              />
+              <p className="pt-1 text-13 text-soft">
+                {[limitsText(station), station.caution, station.isActive ? '' : 'out of use']
+                  .filter(Boolean)
+                  .join('. ')}
+              </p>
+            </li>
+          ))}
+        </ul>
+      )}
+      {isAdding ? (
+        <StationDialog
+          station={null}
+          nextOrder={Math.max(0, ...stations.map((one) => one.walkOrder)) + 1}
+          onClose={() => setIsAdding(false)}
+          onDone={() => router.refresh()}
+        />
+      ) : null}
+      {logged ? (
+        <TemperatureDialog station={logged} onClose={() => setLogged(null)} onDone={() => router.refresh()} />
+      ) : null}
+    </>
+  )
+}
+
+function LastRead({ station, timeZone }: { station: StationRow; timeZone: string }) {
+  if (station.lastC === null || station.lastAt === null) {
+    return <span className="min-w-[190px] text-soft">not read yet</span>
+  }
+  const side = sideOf(station, station.lastC)
+  return (
+    <span className={`min-w-[190px] ${side ? 'font-700 text-alarm' : ''}`}>
+      {station.lastC.toFixed(1).replace('-', '−')} °C on {spokenDay(dayIn(timeZone, station.lastAt), false)}
+      {side ? `, ${side} its limits` : ''}
+    </span>
+  )
+}
+
+export function limitsText(station: {
+  kind: string
+  lowC: number | null
+  highC: number | null
+  humidityPercent: number | null
+  cycleLowC: number | null
+  cycleHighC: number | null
+}): string {
+  const shown = (value: number) => String(value).replace('-', '−')
+  if (station.kind === 'freeze-thaw' && station.cycleLowC !== null && station.cycleHighC !== null) {
+    return `Cycles from ${shown(station.cycleLowC)} to ${shown(station.cycleHighC)} °C`
+  }
+  const limits =
+    station.lowC !== null && station.highC !== null
+      ? `${shown(station.lowC)} to ${shown(station.highC)} °C`
+      : station.highC !== null
+        ? `at most ${shown(station.highC)} °C`
+        : station.lowC !== null
+          ? `at least ${shown(station.lowC)} °C`
+          : 'No limits'
+  return station.humidityPercent === null ? limits : `${limits}, ${station.humidityPercent} % humidity`
+}

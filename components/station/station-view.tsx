@@ -1,0 +1,150 @@
+'use client'
+
+import Link from 'next/link'
+import { useRouter } from 'next/navigation'
+import { useState } from 'react'
+import { Button } from '@/components/ui/button'
+import { Empty } from '@/components/ui/empty'
+import { Heading } from '@/components/ui/heading'
+import { Ledger } from '@/components/ui/ledger'
+import { Section } from '@/components/ui/section'
+import type { StationPage, stationRecord } from '@/lib/station/queries'
+import { dayIn, spokenDay } from '@/lib/study/rules/calendar'
+import { capital, counted } from '@/lib/study/rules/words'
+import { StationDialog } from './station-dialog'
+import { limitsText } from './station-list'
+import { TemperatureDialog } from './temperature-dialog'
+import { TemperaturePlot } from './temperature-plot'
+
+type Record = Awaited<ReturnType<typeof stationRecord>>
+type Props = { station: StationPage; record: Record; timeZone: string; mayWrite: boolean; mayLog: boolean }
+
+/** One station: its temperature record, its excursions, and whose jars stand there. */
+export function StationView({ station, record, timeZone, mayWrite, mayLog }: Props) {
+  const router = useRouter()
+  const [open, setOpen] = useState<'change' | 'log' | null>(null)
+  const { excursions } = record
+  const refresh = () => router.refresh()
+  const close = () => setOpen(null)
+  const moment = (instant: string) => momentIn(timeZone, instant)
+  return (
+    <>
+      <Heading
+        crumb={
+          <>
+            <Link href="/stations">Stations</Link>, {station.name}, {limitsText(station)}
+          </>
+        }
+        headline={<Headline record={record} name={station.name} />}
+        sentence={recordSentence(record)}
+        acts={
+          <>
+            {mayLog ? (
+              <Button kind="primary" onClick={() => setOpen('log')}>
+                Log the temperature
+              </Button>
+            ) : null}
+            {mayWrite ? <Button onClick={() => setOpen('change')}>Change the station</Button> : null}
+          </>
+        }
+      />
+      <div className="mt-6 grid gap-8">
+        <Section title="Temperature" sentence="The last 180 days. Outside the limits is washed.">
+          {record.log.length === 0 ? (
+            <Empty title="No temperature is logged yet" sentence="Typed by a technician, or from a logger." />
+          ) : (
+            <TemperaturePlot station={station} log={record.log} timeZone={timeZone} />
+          )}
+        </Section>
+        {excursions.length > 0 ? (
+          <Section title="Excursions">
+            <Ledger
+              caption="Excursions"
+              rows={excursions.toReversed()}
+              rowKey={(row) => row.from}
+              columns={[
+                { key: 'from', title: 'from', cell: (row) => moment(row.from) },
+                { key: 'to', title: 'to', cell: (row) => moment(row.to) },
+                { key: 'hours', title: 'hours', align: 'right', cell: (row) => row.hours.toFixed(1) },
+                {
+                  key: 'extreme',
+                  title: 'went to',
+                  align: 'right',
+                  cell: (row) => <b className="text-alarm">{row.extremeC.toFixed(1).replace('-', '−')} °C</b>,
+                },
+                { key: 'side', title: 'limits', cell: (row) => `${row.side} them` },
+              ]}
+            />
+          </Section>
+        ) : null}
+        {station.studies.length > 0 ? (
+          <Section title="Studies here">
+            <ul className="flex flex-wrap gap-x-6 gap-y-2">
+              {station.studies.map((study) => (
+                <li key={study.code}>
+                  <Link href={`/studies/${study.code}`} className="underline underline-offset-4">
+                    {study.code}
+                  </Link>{' '}
+                  {study.title}, {study.voice}
+                  {study.state === 'closed' ? ', ended' : ''}
+                </li>
+              ))}
+            </ul>
+          </Section>
+        ) : null}
+        {record.log.length > 0 ? (
+          <Section title="Log">
+            <Ledger
+              caption="The newest forty temperatures"
+              rows={record.log.toReversed().slice(0, 40)}
+              rowKey={(row) => row.id}
+              columns={[
+                { key: 'at', title: 'when', cell: (row) => moment(row.measuredAt) },
+                {
+                  key: 'temperature',
+                  title: '°C',
+                  align: 'right',
+                  cell: (row) => row.temperatureC.toFixed(1).replace('-', '−'),
+                },
+                { key: 'source', title: 'how', cell: (row) => row.source },
+                { key: 'who', title: 'by', cell: (row) => row.initials },
+              ]}
+            />
+          </Section>
+        ) : null}
+      </div>
+      {open === 'change' ? (
+        <StationDialog station={station} nextOrder={station.walkOrder} onClose={close} onDone={refresh} />
+      ) : null}
+      {open === 'log' ? <TemperatureDialog station={station} onClose={close} onDone={refresh} /> : null}
+    </>
+  )
+}
+
+function Headline({ record, name }: { record: Record; name: string }) {
+  if (record.log.length === 0) return <>{name} has no record yet</>
+  if (record.excursions.length === 0) {
+    return (
+      <>
+        {name} <b>stayed inside</b> its limits
+      </>
+    )
+  }
+  return (
+    <>
+      {name} left its limits{' '}
+      <b>{record.excursions.length === 1 ? 'once' : `${counted(record.excursions.length, 'time')}`}</b>
+    </>
+  )
+}
+
+function recordSentence({ mktC, meanC, minC, maxC, readings }: Record): string | undefined {
+  if (mktC === null || meanC === null || minC === null || maxC === null) return undefined
+  const shown = (value: number) => value.toFixed(1).replace('-', '−')
+  return `Mean kinetic temperature ${shown(mktC)} °C, mean ${shown(meanC)} °C, from ${shown(minC)} to ${shown(maxC)} °C. ${capital(counted(readings, 'reading'))} in 180 days. The mean kinetic temperature never excuses an excursion.`
+}
+
+function momentIn(timeZone: string, instant: string): string {
+  const time = new Intl.DateTimeFormat('en-GB', { timeZone, timeStyle: 'short' }).format(new Date(instant))
+  return `${spokenDay(dayIn(timeZone, instant))}, ${time}`
+}

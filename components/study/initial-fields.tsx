@@ -1,0 +1,144 @@
+'use client'
+
+import { NumberField } from '@/components/ui/number-field'
+import { RadioGroup } from '@/components/ui/radio-group'
+import { readNumber } from '@/components/ui/read-number'
+import { Section } from '@/components/ui/section'
+import { Select } from '@/components/ui/select'
+import type { PlannedAttribute, ProtocolPlan } from '@/lib/protocol/schema'
+import { attributeOf } from '@/lib/reading/schema/attributes'
+import { shownWithUnit } from '@/lib/study/rules/words'
+import { initialAttributes, typedKey, type Draft, type Offer } from './start-state'
+
+type Props = {
+  offer: Offer
+  draft: Draft
+  plan: ProtocolPlan
+  set: (change: Partial<Draft>) => void
+  fields: Record<string, string>
+}
+
+/** The readings that every band is told from, per batch, as they are typed. */
+export function InitialFields({ offer, draft, plan, set, fields }: Props) {
+  const attributes = initialAttributes(plan)
+  if (attributes.length === 0) return null
+  const batches = offer.batches.filter((batch) => draft.batchIds.includes(batch.id))
+  return (
+    <Section
+      title="Initial readings"
+      sentence="Bands are told from these. Separation, look, odour and mass start from nothing."
+    >
+      <div className="grid gap-6">
+        {attributes.map((planned) => (
+          <div key={planned.attribute} className="grid gap-3">
+            <div className="flex flex-wrap items-end justify-between gap-3">
+              <p>
+                <b className="font-650">{attributeOf(planned.attribute).label}</b>
+                <span className="block text-13 text-soft">{planned.method}</span>
+              </p>
+              <InstrumentChoice planned={planned} offer={offer} draft={draft} set={set} />
+            </div>
+            {planned.viscosity ? (
+              <RadioGroup
+                label="Viscosity is typed as"
+                hideLabel
+                value={draft.isTorque ? 'torque' : 'value'}
+                onPick={(kind) => set({ isTorque: kind === 'torque' })}
+                options={[
+                  {
+                    value: 'torque',
+                    label: `Torque %, ${planned.viscosity.spindle}, ${planned.viscosity.rpm} rpm`,
+                  },
+                  { value: 'value', label: 'mPa·s' },
+                ]}
+              />
+            ) : null}
+            {batches.map((batch) => (
+              <div key={batch.id} className="flex flex-wrap items-end gap-3">
+                {Array.from({ length: planned.replicates }, (_, place) => {
+                  const key = typedKey(batch.id, planned.attribute)
+                  const texts = draft.typed[key] ?? []
+                  return (
+                    <NumberField
+                      key={place}
+                      label={`${batch.code}${planned.replicates > 1 ? `, replicate ${place + 1}` : ''}`}
+                      value={texts[place] ?? ''}
+                      unit={planned.viscosity && draft.isTorque ? '%' : attributeOf(planned.attribute).unit}
+                      onText={(text) =>
+                        set({
+                          typed: {
+                            ...draft.typed,
+                            [key]: Array.from({ length: planned.replicates }, (_, index) =>
+                              index === place ? text : (texts[index] ?? ''),
+                            ),
+                          },
+                        })
+                      }
+                      error={errorOf(fields, draft, plan, batch.id, planned.attribute)}
+                      wrap="w-[170px]"
+                    />
+                  )
+                })}
+                <Computed
+                  planned={planned}
+                  draft={draft}
+                  texts={draft.typed[typedKey(batch.id, planned.attribute)]}
+                />
+              </div>
+            ))}
+          </div>
+        ))}
+      </div>
+    </Section>
+  )
+}
+
+function InstrumentChoice({
+  planned,
+  offer,
+  draft,
+  set,
+}: Omit<Props, 'plan' | 'fields'> & { planned: PlannedAttribute }) {
+  const kind = planned.attribute === 'ph' ? 'meter' : planned.attribute === 'viscosity' ? 'viscometer' : null
+  const instruments = offer.instruments.filter((one) => one.kind === kind && one.isActive)
+  if (instruments.length === 0) return null
+  return (
+    <Select
+      label={`Instrument for ${attributeOf(planned.attribute).label}`}
+      hideLabel
+      empty="Which instrument"
+      value={draft.instrumentIds[planned.attribute] ?? ''}
+      options={instruments.map((one) => ({ value: one.id, label: `${one.code}, ${one.name}` }))}
+      onPick={(id) => set({ instrumentIds: { ...draft.instrumentIds, [planned.attribute]: id } })}
+      wrap="w-[220px]"
+    />
+  )
+}
+
+/** Torque becomes mPa·s while it is typed. */
+function Computed({ planned, draft, texts }: { planned: PlannedAttribute; draft: Draft; texts?: string[] }) {
+  if (!planned.viscosity || !draft.isTorque) return null
+  const torques = (texts ?? []).map(readNumber).filter((value) => value !== null)
+  if (torques.length === 0) return null
+  const factor = planned.viscosity.spindleConstant / planned.viscosity.rpm
+  const mean = (torques.reduce((sum, torque) => sum + torque, 0) / torques.length) * factor
+  return <p className="pb-1.5 font-600">{shownWithUnit('viscosity', mean)}</p>
+}
+
+/** The server names a reading by its place in what was sent. */
+function errorOf(
+  fields: Record<string, string>,
+  draft: Draft,
+  plan: ProtocolPlan,
+  batchId: string,
+  attribute: string,
+): string | undefined {
+  const sent = draft.batchIds.flatMap((id) =>
+    initialAttributes(plan)
+      .filter((one) => (draft.typed[typedKey(id, one.attribute)] ?? []).some((text) => text.trim() !== ''))
+      .map((one) => typedKey(id, one.attribute)),
+  )
+  const index = sent.indexOf(typedKey(batchId, attribute))
+  const path = Object.keys(fields).find((field) => field.startsWith(`initialReadings.${index}.`))
+  return path ? fields[path] : undefined
+}

@@ -1,0 +1,56 @@
+'use client'
+
+import { RadioGroup } from '@/components/ui/radio-group'
+import { Section } from '@/components/ui/section'
+import type { FitOption } from '@/lib/study/rules/plan'
+import { grouped } from '@/lib/study/rules/words'
+import { JarNeed } from './jar-need'
+import type { Draft, Need } from './start-state'
+
+/** The jars of one batch, and where it is short what would make it fit. */
+export function NeedPart({
+  need,
+  draft,
+  set,
+}: {
+  need: Need
+  draft: Draft
+  set: (change: Partial<Draft>) => void
+}) {
+  const picked = need.options.find(
+    (option) => JSON.stringify(option.adjustments) === JSON.stringify(draft.adjustments),
+  )
+  return (
+    <Section title={`Jars of ${need.batch.code}`}>
+      <JarNeed need={need} />
+      {need.options.length > 0 ? (
+        <div className="mt-4">
+          <RadioGroup
+            label="What would make it fit"
+            layout="ledger"
+            value={picked?.kind ?? 'plan'}
+            onPick={(kind) =>
+              set({ adjustments: need.options.find((option) => option.kind === kind)?.adjustments ?? {} })
+            }
+            options={[
+              { value: 'plan', label: 'As the protocol says' },
+              ...need.options.map((option) => ({
+                value: option.kind,
+                label: option.label,
+                hint: fitText(option),
+              })),
+            ]}
+          />
+        </div>
+      ) : null}
+    </Section>
+  )
+}
+
+function fitText({ jars, grams, leftG }: FitOption) {
+  const needed = `${jars} jars, ${grouped(String(Math.ceil(grams)))} g`
+  if (leftG >= 0) return `${needed}: fits, ${grouped(String(Math.floor(leftG)))} g over`
+  return (
+    <span className="text-alarm">{`${needed}: ${grouped(String(Math.ceil(-leftG)))} g still missing`}</span>
+  )
+}
