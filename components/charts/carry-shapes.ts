@@ -1,41 +1,12 @@
 import { jarShapes } from '../marks/jar-shapes'
 import { moveShapes } from '../marks/place'
-import type { Role, Shape, Words } from '../marks/shape'
+import type { Role, Shape } from '../marks/shape'
 import { standingShapes } from '../marks/standing-shapes'
-import { stripes } from '../marks/texture'
+import { capLine, proposed, ruler, words } from './carry-ruler'
+import type { Frame } from './carry-ruler'
+import type { CarryAttribute, CarryInput, CarryReading } from './carry-data'
 import { frontGeometry } from './sheet-front'
 
-export type CarryReading = {
-  months: number
-  /** One mark a reading: a dot, or a cross for one that is missing. */
-  marks?: ('read' | 'missing')[]
-  /** Or the jars themselves, where what is read is seen. */
-  jars?: { topPercent: number; bottomPercent: number }[]
-}
-
-export type CarryAttribute = {
-  key: string
-  name: string
-  /** How far it carries; null where its bound stays inside past the ruler's end. */
-  months: number | null
-  isLimiting: boolean
-  readings: CarryReading[]
-}
-
-export type CarryInput = {
-  /** End of the ruler. */
-  endMonths: number
-  /** Months with a long tick and their number. */
-  ticks: number[]
-  readToMonths: number
-  proposedMonths: number | null
-  capMonths: number | null
-  /** `cap: twice 12`. */
-  capText?: string
-  attributes: CarryAttribute[]
-}
-
-const RULER = 52
 const FIRST_TOP = 66
 const FIRST_SHELF = 102
 const PITCH = 43
@@ -79,80 +50,6 @@ export function carryShapes(input: CarryInput, width: number): Shape[] {
   ]
 }
 
-type Frame = {
-  x: (months: number) => number
-  width: number
-  zero: number
-  end: number
-  isNarrow: boolean
-  bottom: number
-}
-
-function text(words: Omit<Words, 'kind' | 'weight' | 'anchor' | 'fill'> & Partial<Words>): Shape {
-  return { weight: 430, anchor: 'start', fill: 'ink', ...words, kind: 'text' }
-}
-
-function ruler(input: CarryInput, { x, zero, end, isNarrow }: Frame): Shape[] {
-  const shapes: Shape[] = [
-    { kind: 'line', x1: zero, x2: end, y1: RULER, y2: RULER, stroke: 'ink', width: 1.75 },
-    text({ x: zero, y: 16, text: 'month', size: 13, anchor: 'middle', fill: 'soft' }),
-  ]
-  for (let month = 0; month <= input.endMonths; month += 1) {
-    const isLong = input.ticks.includes(month)
-    if (isNarrow && !isLong) continue
-    const length = isLong ? 11 : month % 3 === 0 ? 7 : 4
-    shapes.push({
-      kind: 'line',
-      x1: x(month),
-      x2: x(month),
-      y1: RULER,
-      y2: RULER - length,
-      stroke: 'ink',
-      width: isLong ? 1.75 : 0.9,
-    })
-  }
-  let last = -Infinity
-  for (const month of input.ticks) {
-    const isUnderTag = input.proposedMonths !== null && Math.abs(x(month) - x(input.proposedMonths)) < 56
-    if (x(month) - last < 26 || isUnderTag) continue
-    last = x(month)
-    shapes.push(text({ x: x(month), y: 36, text: String(month), size: 17, weight: 600, anchor: 'middle' }))
-  }
-  const readX = x(input.readToMonths)
-  const hasRoom = readX - zero > 80 && (input.proposedMonths === null || x(input.proposedMonths) - readX > 84)
-  if (!isNarrow && hasRoom)
-    shapes.push(text({ x: readX, y: 16, text: 'read to here', size: 13, anchor: 'middle', fill: 'soft' }))
-  return shapes
-}
-
-function capLine({ capMonths, capText, proposedMonths, endMonths }: CarryInput, frame: Frame): Shape[] {
-  if (capMonths === null || capMonths >= endMonths) return []
-  const { x, end, bottom } = frame
-  const at = x(capMonths)
-  const isClear = proposedMonths === null || Math.abs(x(proposedMonths) - at) > 84
-  return [
-    {
-      kind: 'path',
-      fill: 'soft',
-      steps: stripes(
-        [
-          [at, RULER + 1],
-          [end, RULER + 1],
-          [end, RULER + 7],
-          [at, RULER + 7],
-        ],
-        5,
-        1,
-        'falling',
-      ),
-    },
-    { kind: 'line', x1: at, x2: at, y1: RULER, y2: bottom, stroke: 'ink', width: 1.25 },
-    ...(capText && isClear
-      ? [text({ x: at, y: 16, text: capText, size: 13, anchor: 'middle', fill: 'soft' })]
-      : []),
-  ]
-}
-
 function shelfOf(attribute: CarryAttribute, shelf: number, input: CarryInput, frame: Frame): Shape[] {
   const { x, width, isNarrow } = frame
   const { isLimiting, months } = attribute
@@ -161,7 +58,7 @@ function shelfOf(attribute: CarryAttribute, shelf: number, input: CarryInput, fr
   const carriedTo = months === null ? width - 8 : x(Math.min(months, input.endMonths)) - 3
   const size = isNarrow ? 15 : isLimiting ? 20 : 17
   return [
-    text({ x: 0, y: shelf - 6, text: attribute.name, size, weight: isLimiting ? 720 : 430 }),
+    words({ x: 0, y: shelf - 6, text: attribute.name, size, weight: isLimiting ? 720 : 430 }),
     {
       kind: 'line',
       x1: 0,
@@ -241,7 +138,7 @@ function fallen(
   const markX = at + size / 2 + 5
   const value = months.toFixed(1)
   const isLate = markX + size / 2 + 60 > end + 22
-  const number = text({
+  const number = words({
     x: isLate ? at - 9 : markX + size / 2 + 9,
     y: shelf - (isLimiting ? 4 : 5),
     text: value,
@@ -256,7 +153,7 @@ function fallen(
     ...moveShapes(mark, markX, shelf + 0.5),
     number,
     ...(hasSentence
-      ? [text({ x: sentenceX, y: shelf - 4, text: 'months, then its bound meets the limit', size: 15 })]
+      ? [words({ x: sentenceX, y: shelf - 4, text: 'months, then its bound meets the limit', size: 15 })]
       : []),
   ]
 }
@@ -268,33 +165,13 @@ function pastTheEnd(shelf: number, input: CarryInput, { width }: Frame): Shape[]
       fill: 'ink',
       steps: [['M', width - 9, shelf - 5], ['L', width, shelf + 1], ['L', width - 9, shelf + 7], ['Z']],
     },
-    text({
+    words({
       x: width - 12,
       y: shelf - 8,
       text: `inside past ${input.endMonths}`,
       size: 14,
       anchor: 'end',
       fill: 'soft',
-    }),
-  ]
-}
-
-function proposed({ proposedMonths }: CarryInput, { x, bottom }: Frame): Shape[] {
-  if (proposedMonths === null) return []
-  const at = x(proposedMonths)
-  return [
-    { kind: 'line', x1: at, x2: at, y1: RULER, y2: bottom, stroke: 'ink', width: 1.75 },
-    { kind: 'rect', x: at - 41, y: 0, w: 82, h: 46, rx: 3, fill: 'ink' },
-    { kind: 'path', fill: 'ink', steps: [['M', at - 6, 45], ['L', at + 6, 45], ['L', at, 53], ['Z']] },
-    text({ x: at, y: 18, text: 'proposed', size: 13, weight: 500, anchor: 'middle', fill: 'onInk' }),
-    text({
-      x: at,
-      y: 37,
-      text: String(proposedMonths),
-      size: 17,
-      weight: 700,
-      anchor: 'middle',
-      fill: 'onInk',
     }),
   ]
 }

@@ -2,7 +2,7 @@
 
 import { Drawn } from '../marks/drawn'
 import { carryHeight, carryShapes } from './carry-shapes'
-import type { CarryInput } from './carry-shapes'
+import type { CarryInput } from './carry-data'
 import { useWidth } from './use-width'
 
 /** How far each attribute carries, drawn; the case's table beside it says the same in numbers. */

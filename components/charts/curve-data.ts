@@ -47,3 +47,26 @@ export type CurveInput = {
   /** Said beside the doubted readings of a week. */
   notes?: CurveNote[]
 }
+
+export type CurveFrame = {
+  width: number
+  height: number
+  /** Left edge of the plot and where time zero and the end lie on it. */
+  left: number
+  zero: number
+  end: number
+}
+
+export type CurveTime = { startOn: string; endWeeks: number; todayWeeks: number | null }
+
+/** The plot in pixels: where times and shares of the height lie. */
+export type CurvePlace = {
+  left: number
+  right: number
+  top: number
+  bottom: number
+  x: (weeks: number) => number
+  y: (share: number) => number
+  /** Too narrow for sentences: they are written beside the plot instead. */
+  isNarrow: boolean
+}

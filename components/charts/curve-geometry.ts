@@ -230,3 +230,9 @@ export function markerOf(series: CurveSeries, index: number): StationMarker {
   if (series.kind !== 'batch') return heatMarker(series.temperatureC)
   return BATCH_MARKERS[index % BATCH_MARKERS.length] ?? 'circle'
 }
+
+/** Leaning and out in alarm; the rest in ink, or in soft beside the one that is looked at. */
+export function colourRole(series: CurveSeries): 'alarm' | 'ink' | 'soft' {
+  if (series.standing === 'out' || series.standing === 'leaning') return 'alarm'
+  return series.isQuiet ? 'soft' : 'ink'
+}

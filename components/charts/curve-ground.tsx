@@ -1,7 +1,6 @@
-import type { CurveInput } from './curve-data'
+import type { CurveInput, CurvePlace } from './curve-data'
 import { washes } from './curve-geometry'
 import type { CurveScale } from './curve-geometry'
-import type { CurvePlace } from './curve-marks'
 
 /** What lies under the lines of a plot: paper within the band, wash outside, the scale's hairlines. */
 export function CurveGround({

@@ -1,25 +1,11 @@
 import { Drawn } from '../marks/drawn'
-import { heatWeight } from '../marks/heat'
 import { stationMarkerShapes } from '../marks/station-marker-shapes'
-import type { CurveInput } from './curve-data'
-import { curveName, doubtGroups, markerOf, nearerEdge, spreadNames, washes } from './curve-geometry'
+import type { CurveInput, CurvePlace, CurveTime } from './curve-data'
+import { doubtGroups, markerOf, nearerEdge, washes } from './curve-geometry'
 import type { CurveScale, PlottedCurve } from './curve-geometry'
-import { colourRole } from './curve-plot'
-import type { CurveTime } from './curve-plot'
-import { halo } from './sheet-drawing'
+import { CurveNames } from './curve-names'
+import { halo } from './halo'
 import { dayAfter, dayName } from './time-scale'
-
-/** The plot in pixels: where times and shares of the height lie. */
-export type CurvePlace = {
-  left: number
-  right: number
-  top: number
-  bottom: number
-  x: (weeks: number) => number
-  y: (share: number) => number
-  /** Too narrow for sentences: they are written beside the plot instead. */
-  isNarrow: boolean
-}
 
 /** What is written and drawn over a plot: the band's edges, today, doubts, leaving dates, names. */
 export function CurveMarks({
@@ -56,7 +42,7 @@ export function CurveMarks({
       {curves.map((curve) => (
         <Leaving key={curve.series.id} curve={curve} input={input} scale={scale} place={place} time={time} />
       ))}
-      <Names curves={curves} place={place} today={today} behind={behind} />
+      <CurveNames curves={curves} place={place} today={today} behind={behind} />
     </svg>
   )
 }
@@ -232,62 +218,4 @@ function Leaving({
       )}
     </g>
   )
-}
-
-/** Width of a name in the 17 px it is set in, near enough to keep it off today's line. */
-const NAME_LETTER = 8.6
-
-function Names({
-  curves,
-  place,
-  today,
-  behind,
-}: {
-  curves: PlottedCurve[]
-  place: CurvePlace
-  today: number | null
-  behind: (share: number) => string
-}) {
-  const named = curves.filter(({ measured }) => measured.length > 0)
-  return (['edge', 'after'] as const).flatMap((side) => {
-    const group = named.filter(({ name }) => name.side === side)
-    const ys = spreadNames(
-      group.map(({ name }) => place.y(name.share) + (side === 'edge' ? -9 : 5)),
-      19,
-      place.top + 18,
-      place.bottom - 5,
-    )
-    return group.map(({ series, name }, index) => {
-      const length = `${curveName(series)} ${series.standing}`.length * NAME_LETTER
-      const x = side === 'edge' ? place.right - 8 : afterX(place, name.weeks, length, today)
-      const y = ys[index] ?? 0
-      return (
-        <text
-          key={series.id}
-          x={x}
-          y={y}
-          fontSize={17}
-          textAnchor={side === 'edge' ? 'end' : 'start'}
-          style={{
-            fill: `var(--${colourRole(series)})`,
-            ...halo(behind((place.bottom - y + 6) / (place.bottom - place.top))),
-          }}
-        >
-          <tspan fontWeight={series.kind === 'batch' ? 600 : heatWeight(series.temperatureC)}>
-            {curveName(series)}
-          </tspan>
-          <tspan fontWeight={colourRole(series) === 'alarm' ? 600 : 430}> {series.standing}</tspan>
-        </text>
-      )
-    })
-  })
-}
-
-/** A name follows its latest reading; where today's line would cross it, it stands before the reading. */
-function afterX(place: CurvePlace, weeks: number, length: number, today: number | null): number {
-  const x = place.x(weeks) + 14
-  const crosses = today !== null && x < place.x(today) && x + length > place.x(today) - 4
-  const before = place.x(weeks) - 16 - length
-  if ((crosses || x + length > place.right - 6) && before > place.left) return before
-  return Math.min(x, place.right - length - 6)
 }

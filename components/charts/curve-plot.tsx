@@ -6,24 +6,12 @@ import { Area, ComposedChart, Line, Tooltip, XAxis, YAxis } from 'recharts'
 import { colourOf, Drawn } from '../marks/drawn'
 import { heatLine } from '../marks/heat'
 import { stationMarkerShapes } from '../marks/station-marker-shapes'
-import type { CurveInput, CurveSeries } from './curve-data'
-import { axisNumber, curveName, curveScale, markerOf, plotCurve } from './curve-geometry'
+import type { CurveFrame, CurveInput, CurvePlace, CurveSeries, CurveTime } from './curve-data'
+import { axisNumber, colourRole, curveName, curveScale, markerOf, plotCurve } from './curve-geometry'
 import type { PlottedCurve } from './curve-geometry'
 import { CurveGround } from './curve-ground'
 import { CurveMarks } from './curve-marks'
-import type { CurvePlace } from './curve-marks'
 import { dayAfter, dayName, timeLabel, unitOf } from './time-scale'
-
-export type CurveFrame = {
-  width: number
-  height: number
-  /** Left edge of the plot and where time zero and the end lie on it. */
-  left: number
-  zero: number
-  end: number
-}
-
-export type CurveTime = { startOn: string; endWeeks: number; todayWeeks: number | null }
 
 type Row = { weeks: number } & Record<string, number | [number, number] | undefined>
 
@@ -139,11 +127,6 @@ export function CurvePlot({ input, time, frame }: { input: CurveInput; time: Cur
       <CurveMarks input={input} curves={curves} scale={scale} time={time} place={place} />
     </div>
   )
-}
-
-export function colourRole(series: CurveSeries): 'alarm' | 'ink' | 'soft' {
-  if (series.standing === 'out' || series.standing === 'leaning') return 'alarm'
-  return series.isQuiet ? 'soft' : 'ink'
 }
 
 function Hatch({ id, colour }: { id: string; colour: string }) {

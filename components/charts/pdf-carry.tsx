@@ -1,6 +1,6 @@
 import { PdfFigure } from '../marks/pdf-drawn'
 import { carryHeight, carryShapes } from './carry-shapes'
-import type { CarryInput } from './carry-shapes'
+import type { CarryInput } from './carry-data'
 
 /** The same drawing in a @react-pdf document, `width` points wide. */
 export function PdfCarry({

@@ -1,13 +1,13 @@
 import { Drawn } from '../marks/drawn'
 import { flagShapes } from '../marks/flag-shapes'
 import { heatLine } from '../marks/heat'
-import { jarShapes } from '../marks/jar-shapes'
 import { moveShapes } from '../marks/place'
+import { halo } from './halo'
 import { SheetForecast } from './sheet-forecast'
 import { frontGeometry } from './sheet-front'
 import type { Segment } from './sheet-front'
-import { jarShift, jarStateOf } from './sheet-layout'
-import type { PlacedRow, SheetCell, SheetLayout, SheetProps } from './sheet-layout'
+import { SheetJar } from './sheet-jar'
+import type { PlacedRow, SheetLayout, SheetProps } from './sheet-layout'
 
 export type SheetSelection = { rowId: string; weeks: number }
 
@@ -108,10 +108,6 @@ function TodayLine({ x, rows, weeks }: { x: number; rows: PlacedRow[]; weeks: nu
   return <path d={parts.join('')} stroke="var(--ink)" strokeWidth={1.25} />
 }
 
-export function halo(colour: string) {
-  return { paintOrder: 'stroke', stroke: colour, strokeWidth: 4, strokeLinejoin: 'round' } as const
-}
-
 function Row({
   placed,
   layout,
@@ -140,7 +136,7 @@ function Row({
         strokeDasharray={isFreezeThaw ? '9 5' : undefined}
       />
       {row.cells.map((cell) => (
-        <Cell
+        <SheetJar
           key={cell.weeks}
           cell={cell}
           x={scale.x(cell.weeks)}
@@ -172,67 +168,6 @@ function Row({
         >
           {row.remark}
         </text>
-      ) : null}
-    </g>
-  )
-}
-
-function Cell({
-  cell,
-  x,
-  shelf,
-  jarTop,
-  glyph,
-  labelY,
-  behind,
-  isSelected,
-}: {
-  cell: SheetCell
-  x: number
-  shelf: number
-  jarTop: number
-  glyph: number
-  labelY: number
-  behind: string
-  isSelected: boolean
-}) {
-  const isOut = cell.posture === 'lying'
-  const shapes = jarShapes({
-    height: glyph,
-    state: jarStateOf(cell),
-    posture: cell.posture,
-    topPercent: cell.topPercent ?? undefined,
-    bottomPercent: cell.bottomPercent ?? undefined,
-    detectionPercent: cell.detectionPercent ?? undefined,
-  })
-  const half = isOut ? glyph * 0.65 : glyph * 0.46
-  const frameTop = isOut ? shelf - glyph * 0.8 : jarTop - (cell.posture === 'leaning' ? 12 : 8)
-  return (
-    <g>
-      <Drawn shapes={moveShapes(shapes, x + jarShift(cell, glyph), shelf)} />
-      {cell.label ? (
-        <text
-          x={x}
-          y={labelY}
-          fontSize={14}
-          fontWeight={isOut ? 750 : 430}
-          textAnchor="middle"
-          style={{ fill: isOut ? 'var(--alarm)' : 'var(--ink)', ...halo(behind) }}
-        >
-          {cell.label}
-        </text>
-      ) : null}
-      {isSelected ? (
-        <rect
-          x={x - half + (isOut ? 3 : 0)}
-          y={frameTop}
-          width={half * 2}
-          height={labelY + 6 - frameTop}
-          rx={4}
-          fill="none"
-          stroke="var(--ink)"
-          strokeWidth={2.5}
-        />
       ) : null}
     </g>
   )

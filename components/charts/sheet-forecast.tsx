@@ -1,4 +1,4 @@
-import { halo } from './sheet-drawing'
+import { halo } from './halo'
 import type { SheetLayout, SheetRow } from './sheet-layout'
 import { dayAfter, dayName } from './time-scale'
 

@@ -83,7 +83,7 @@ function Station({
       <Drawn shapes={moveShapes(standingShapes({ standing: row.standing, size: markSize }), markX, shelf)} />
       <text
         x={isNarrow ? width - 6 : markX}
-        y={isNarrow ? shelf - 24 : shelf - (isSmall ? 32 : 44)}
+        y={isNarrow ? shelf - 40 : shelf - (isSmall ? 32 : 44)}
         fontSize={isNarrow ? 13 : 15}
         fontWeight={row.standing === 'out' ? 750 : row.standing === 'leaning' ? 650 : 430}
         textAnchor={isNarrow ? 'end' : 'middle'}

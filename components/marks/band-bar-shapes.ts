@@ -99,14 +99,16 @@ export function bandBarShapes(input: BandBarInput): Shape[] {
 
 /** Share of the way from the initial to the nearer edge that lies in the value's direction: 1 at the edge. */
 export function bandUse(value: number, { lower, upper, initial }: BandBarInput): number {
-  if (isNumber(upper) && value > upper) return Math.max(1.0001, useOf(value, initial ?? lower ?? 0, upper))
-  if (isNumber(lower) && value < lower) return Math.max(1.0001, useOf(value, initial ?? upper ?? 0, lower))
+  if (isNumber(upper) && value > upper)
+    return Math.max(1.0001, shareUsed(value, initial ?? lower ?? 0, upper))
+  if (isNumber(lower) && value < lower)
+    return Math.max(1.0001, shareUsed(value, initial ?? upper ?? 0, lower))
   if (!isNumber(initial)) return 0
   const edge = value >= initial ? upper : lower
-  return isNumber(edge) ? useOf(value, initial, edge) : 0
+  return isNumber(edge) ? shareUsed(value, initial, edge) : 0
 }
 
-function useOf(value: number, from: number, edge: number): number {
+function shareUsed(value: number, from: number, edge: number): number {
   return edge === from ? 0 : (value - from) / (edge - from)
 }
 

@@ -1,7 +1,15 @@
-import type { JarFrame, JarInput } from './jar-shapes'
+import type { JarFrame } from './jar-frame'
 import { polygonSteps } from './shape'
 import type { Point, Role, Shape, Step } from './shape'
 import { dots, stripes } from './texture'
+
+/** What was measured, in percent of the fill height. */
+export type JarLayers = {
+  topPercent?: number
+  bottomPercent?: number
+  /** Layers under this share of the fill cannot be read with a ruler and become a hairline. */
+  detectionPercent?: number
+}
 
 /** From this height on a layer carries its texture; below it would be noise. */
 export const TEXTURE_FROM = 3
@@ -24,7 +32,7 @@ export function layerHeight(
   return Math.max(1, (Math.min(percent, 100) / 100) * fill)
 }
 
-export function layerShapes(frame: JarFrame, input: JarInput): Shape[] {
+export function layerShapes(frame: JarFrame, input: JarLayers): Shape[] {
   const limit = input.detectionPercent ?? DETECTION_PERCENT
   const bottom = layerHeight(input.bottomPercent, frame, limit)
   const top = layerHeight(input.topPercent, frame, limit)

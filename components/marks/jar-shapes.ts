@@ -1,20 +1,19 @@
 import { placePoint, placeShapes } from './place'
 import type { Placement } from './place'
 import type { Point, Role, Shape, Stroke } from './shape'
+import { jarFrame } from './jar-frame'
+import type { JarFrame } from './jar-frame'
 import { layerShapes } from './jar-layers'
+import type { JarLayers } from './jar-layers'
 
 export type JarKind = 'watch' | 'measuring' | 'spare' | 'retain'
 export type JarState = 'drawn' | 'due' | 'planned' | 'missed' | 'resting' | 'broken' | 'spent'
 export type Posture = 'upright' | 'leaning' | 'lying'
 
-export type JarInput = {
+export type JarInput = JarLayers & {
   height: number
   kind?: JarKind
   state?: JarState
-  topPercent?: number
-  bottomPercent?: number
-  /** Layers thinner than this share of the fill cannot be read with a ruler and become a hairline. */
-  detectionPercent?: number
   posture?: Posture
   /** Drawn in the alarm colour; a jar that leans or lies always is. */
   alarm?: boolean
@@ -24,52 +23,6 @@ export type JarInput = {
 
 export const LEAN_DEGREES = 12
 export const FALL_DEGREES = 90
-
-/** Every length of a jar that stands `height` high, its foot's middle at 0, 0 and y running down. */
-export type JarFrame = {
-  height: number
-  halfWidth: number
-  wall: number
-  lidHeight: number
-  lidHalfWidth: number
-  footRadius: number
-  fillTop: number
-  fillBottom: number
-  /** The inside of the glass. */
-  halfInside: number
-  insideRadius: number
-  /** The middle of the glass, where its stroke runs. */
-  halfGlass: number
-  glassFoot: number
-}
-
-export function jarWall(height: number): number {
-  if (height < 24) return 1.2
-  if (height < 40) return 1.5
-  if (height < 60) return 1.75
-  return Math.min(5, Math.max(2.25, height * 0.02))
-}
-
-export function jarFrame(height: number): JarFrame {
-  const wall = jarWall(height)
-  const halfWidth = height * 0.3
-  const lidHeight = height * 0.115
-  const footRadius = Math.max(1.5, height * 0.054)
-  return {
-    height,
-    halfWidth,
-    wall,
-    lidHeight,
-    lidHalfWidth: height * 0.312,
-    footRadius,
-    fillTop: -(height - lidHeight - height * 0.05),
-    fillBottom: -wall,
-    halfInside: halfWidth - wall,
-    insideRadius: footRadius - wall / 2,
-    halfGlass: halfWidth - wall / 2,
-    glassFoot: -wall / 2,
-  }
-}
 
 export function jarShapes(input: JarInput): Shape[] {
   const frame = jarFrame(input.height)

@@ -2,7 +2,7 @@ import { renderToStaticMarkup } from 'react-dom/server'
 import { describe, expect, it } from 'vitest'
 import { Carry, carrySentence } from '@/components/charts/carry'
 import { carryHeight, carryShapes } from '@/components/charts/carry-shapes'
-import type { CarryInput } from '@/components/charts/carry-shapes'
+import type { CarryInput } from '@/components/charts/carry-data'
 import type { CurveSeries } from '@/components/charts/curve-data'
 import {
   axisNumber,

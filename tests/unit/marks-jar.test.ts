@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { boundsOf } from '@/components/marks/place'
-import { jarFrame, jarPitch, jarShapes, jarWall, rightFoot } from '@/components/marks/jar-shapes'
+import { jarFrame, jarWall } from '@/components/marks/jar-frame'
+import { jarPitch, jarShapes, rightFoot } from '@/components/marks/jar-shapes'
 import type { Path, Rect, Shape } from '@/components/marks/shape'
 
 const layersOf = (shapes: Shape[], role: 'water' | 'oil' | 'oilLine' | 'cream') =>
