@@ -16,7 +16,7 @@ import { useWidth } from './use-width'
 const STATION_WIDTH = 196
 const NARROW_STATION_WIDTH = 128
 /** The jar of time zero reaches this far left of it. */
-const ZERO_JAR = 24
+const ZERO_JAR = 28
 
 /**
  * A study's sheet: stations by time points on one ruler, the front, flags and forecasts in the unspent
