@@ -76,21 +76,26 @@ function isBetter(squares: number, lineSquares: number, df: number): boolean {
 
 type FirstOrder = { plateau: number; k: number; start: number; squares: number }
 
-/** Best of a grid over lag and rate constant, the plateau being linear in them; then polished together. */
+/**
+ * Best of a grid over lag and rate constant, the plateau being linear in them; then polished together. Time is
+ * counted in shares of its range, so that units do not matter.
+ */
 function fitFirstOrder(x: readonly number[], y: readonly number[], lineStart: number): FirstOrder | null {
   const range = x[x.length - 1]! - x[0]!
+  const share = x.map((time) => (time - x[0]!) / range)
   let best: FirstOrder | null = null
-  const starts = [lineStart, ...Array.from({ length: 40 }, (_, i) => x[0]! + (range * i) / 40)]
+  const starts = [(lineStart - x[0]!) / range, ...Array.from({ length: 40 }, (_, i) => i / 40)]
   for (const start of starts) {
     for (let step = 0; step <= 24; step++) {
-      const k = (0.1 * 10 ** (step / 8)) / range
-      const found = withPlateau(x, y, k, start)
+      const found = withPlateau(share, y, 0.1 * 10 ** (step / 8), start)
       if (found && found.squares < (best?.squares ?? Infinity)) best = found
     }
   }
   if (best === null) return null
-  const polished = polish(x, y, best)
-  return polished.squares < best.squares && isInJar(polished) ? polished : best
+  const polished = polish(share, y, best)
+  const { plateau, k, start, squares } =
+    polished && polished.squares < best.squares && isInJar(polished) ? polished : best
+  return { plateau, k: k / range, start: x[0]! + start * range, squares }
 }
 
 function withPlateau(
@@ -112,21 +117,29 @@ function withPlateau(
   return isInJar(found) ? found : null
 }
 
-function polish(x: readonly number[], y: readonly number[], from: FirstOrder): FirstOrder {
-  const { parameterValues } = levenbergMarquardt(
-    { x: [...x], y: [...y] },
-    ([plateau = 0, k = 0, start = 0]) =>
-      (time) =>
-        plateau * shapeAt(time, k, start),
-    {
-      initialValues: [from.plateau, from.k, from.start],
-      gradientDifference: [1e-6 * Math.max(1, from.plateau), 1e-6 * from.k, 1e-6],
-      centralDifference: true,
-      maxIterations: 100,
-    },
-  )
-  const [plateau = NaN, k = NaN, start = NaN] = parameterValues
-  return { plateau, k, start, squares: squaresOf(x, y, plateau, k, start) }
+/** null where the curve cannot tell its parameters apart: then the grid's best stands. */
+function polish(x: readonly number[], y: readonly number[], from: FirstOrder): FirstOrder | null {
+  try {
+    const { parameterValues } = levenbergMarquardt(
+      { x: [...x], y: [...y] },
+      ([plateau = 0, k = 0, start = 0]) =>
+        (time) =>
+          plateau * shapeAt(time, k, start),
+      {
+        initialValues: [from.plateau, from.k, from.start],
+        gradientDifference: [1e-6 * from.plateau, 1e-6 * from.k, 1e-6],
+        centralDifference: true,
+        maxIterations: 300,
+        errorTolerance: 1e-12,
+      },
+    )
+    const [plateau = NaN, k = NaN, start = NaN] = parameterValues
+    return { plateau, k, start, squares: squaresOf(x, y, plateau, k, start) }
+  } catch (error) {
+    // The package throws plain errors on a singular or lopsided normal matrix.
+    if (error instanceof Error) return null
+    throw error
+  }
 }
 
 function isInJar({ plateau, k }: FirstOrder): boolean {

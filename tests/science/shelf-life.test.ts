@@ -117,7 +117,7 @@ describe('shelf life by the method of ICH Q1E (2003) Appendix B, figures from R 
 
 describe('shelf life as data change', () => {
   const batch = fc.record({
-    t: fc.constant([0, 3, 6, 9, 12, 18]),
+    t: fc.constant<number[]>([0, 3, 6, 9, 12, 18]),
     start: fc.integer({ min: 98, max: 102 }),
     slope: fc.integer({ min: -30, max: -5 }),
     noise: fc.array(fc.integer({ min: -30, max: 30 }), { minLength: 6, maxLength: 6 }),

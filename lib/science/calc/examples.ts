@@ -220,9 +220,9 @@ export const examples = {
     },
     output: {
       onset: 4.043478260869565,
-      rate: 2.5774581878642584,
-      plateau: 16.026443295653912,
-      residualSd: 0.09215946332239146,
+      rate: 2.577476942318868,
+      plateau: 16.026330314406625,
+      residualSd: 0.0921594628901342,
       model: 'first order after a lag',
     },
   },

@@ -1,0 +1,211 @@
+import { spawnSync } from 'node:child_process'
+import path from 'node:path'
+import fc from 'fast-check'
+import { beforeAll, describe, expect, it } from 'vitest'
+import { isFiniteThroughout, ScienceError } from '@/lib/science/guard'
+import { allTopics, findTopic, topicNames } from '@/lib/science/calc/topics'
+import type { Topic } from '@/lib/science/calc/topic'
+
+const root = path.resolve(import.meta.dirname, '../..')
+const tsx = path.join(root, 'node_modules/.bin/tsx')
+
+function calc(args: string[], input: string) {
+  const { status, stdout, stderr } = spawnSync(tsx, [path.join(root, 'lib/cli/calc.ts'), ...args], {
+    cwd: root,
+    input,
+    encoding: 'utf8',
+  })
+  return { status, stdout, stderr }
+}
+
+let topics: Topic[]
+beforeAll(async () => {
+  topics = await allTopics()
+})
+
+describe('calc as a command', { timeout: 60_000 }, () => {
+  it('answers with one JSON object on stdout', () => {
+    const { status, stdout, stderr } = calc(['viscosity'], '{"torquePercent":62,"factor":1000}')
+    expect({ status, stderr }).toEqual({ status: 0, stderr: '' })
+    expect(JSON.parse(stdout)).toEqual({
+      mPas: 62000,
+      fullScalemPas: 100000,
+      errorPercent: 100 / 62,
+      doubt: null,
+    })
+  })
+
+  it('exits 2 with one line on stderr that names the field, and nothing on stdout', () => {
+    for (const [args, input, line] of [
+      [['regression'], '{"x":["a",2,3],"y":[1,2,3]}', 'x[0]: must be a number, not the text "a"\n'],
+      [['regression'], '', 'input: is empty; see calc regression --help\n'],
+      [['regression'], '{"x":', /^input: is not valid JSON: [^\n]+\n$/],
+      [['nothing'], '{}', /^topic: there is no "nothing"; topics are regression, [^\n]+jar-plan\n$/],
+      [[], '{}', /^topic: is missing; topics are regression, [^\n]+\n$/],
+    ] as const) {
+      const { status, stdout, stderr } = calc([...args], input)
+      expect({ status, stdout }).toEqual({ status: 2, stdout: '' })
+      if (typeof line === 'string') expect(stderr).toBe(line)
+      else expect(stderr).toMatch(line)
+    }
+  })
+
+  it('lists its topics, and shows input, output and a worked example of each', () => {
+    const help = calc(['--help'], '')
+    expect(help.status).toBe(0)
+    for (const name of topicNames) expect(help.stdout).toContain(`  ${name} `)
+    const own = calc(['mkt', '--help'], '')
+    expect(own.stdout).toContain('Input:  {temperaturesC:[], hoursEach?:[], deltaHkJ?:83.144}')
+    expect(own.stdout).toContain('"mktC": 25.26373')
+  })
+})
+
+describe('topics', () => {
+  it('are the twenty that are promised', () => {
+    expect(topicNames).toEqual(topics.map((topic) => topic.name))
+    expect(topicNames).toHaveLength(20)
+  })
+
+  it('each compute their worked example', () => {
+    for (const topic of topics) expectClose(topic.run(topic.example.input), topic.example.output, topic.name)
+  })
+
+  it.each([
+    ['regression', { x: [1, 2, 3] }, 'y: is missing'],
+    [
+      'regression',
+      { x: [1, 2, 3], y: [1, 2, 3], confidance: 0.9 },
+      /^confidance: is not a field here; known are x, y,/,
+    ],
+    [
+      'shelf-life',
+      { batches: 3, limit: {}, direction: 'either', horizon: 9 },
+      'batches: must be a list, not 3',
+    ],
+    [
+      'shelf-life',
+      { batches: [{ name: 'A', t: [0, 1, 2], y: [1, 2, null] }], limit: {}, direction: 'either', horizon: 9 },
+      'batches[0].y[2]: must be a number, not null',
+    ],
+    [
+      'shelf-life',
+      { batches: [{ name: 'A', t: [0, 1, 2], y: [1, 2, 3] }], limit: {}, direction: 'up', horizon: 9 },
+      'direction: must be one of decreasing, increasing, either, not "up"',
+    ],
+    [
+      'phase-fraction',
+      { lines: [{ percent: 1, density: 1, internal: 'yes' }] },
+      /^lines\[0\]\.internal: must be true or false/,
+    ],
+    ['viscosity', { torquePercent: 1, factor: 2, rpm: 3 }, /^factor: stands for spindleConstant and rpm/],
+    ['viscosity', { torquePercent: 1 }, 'factor: is missing'],
+    ['separation', { totalMm: 40, topMm: 41, bottomMm: 0 }, 'topMm: is higher than the fill of 40'],
+    [
+      'drift',
+      { times: [0, 1], values: [1], tolerance: { kind: 'shift' }, endTime: 9 },
+      /^values: has 1 values, but times has 2/,
+    ],
+    [
+      'drift',
+      { times: [0], values: [1], tolerance: { kind: 'shift' }, endTime: 9 },
+      /^tolerance: gives no limit/,
+    ],
+    [
+      'drift',
+      { times: [0], values: [[]], tolerance: { kind: 'shift', below: 1 }, endTime: 9 },
+      /^values\[0\]: is an empty list/,
+    ],
+    [
+      'drift',
+      { times: [0], values: [9], tolerance: { kind: 'range', upper: 5 }, endTime: 9 },
+      'initial: 9 lies outside its own band',
+    ],
+    [
+      'drift',
+      { times: [0], values: [1], tolerance: { kind: 'range', below: 5 }, endTime: 9 },
+      /^tolerance\.below: does not belong/,
+    ],
+    ['centrifuge', { rpm: 1e300, radiusMm: 1 }, /^rpm: holds numbers too large/],
+  ])('%s refuses %j', async (name, input, message) => {
+    const topic = await findTopic(name)
+    expect(() => topic!.run(input)).toThrow(ScienceError)
+    expect(() => topic!.run(input)).toThrow(message)
+  })
+
+  it('drift takes a time given again as a repeat on a spare jar', async () => {
+    const drift = (await findTopic('drift'))!
+    const input = { tolerance: { kind: 'shift', below: 0.5, above: 0.5 }, endTime: 26, repeatabilitySd: 0.03 }
+    const once = drift.run({ ...input, times: [0, 1, 2, 3], values: [5.5, 5.5, 5.49, 4.9] })
+    expect(once).toMatchObject({ standing: 'steady' })
+    const twice = drift.run({ ...input, times: [0, 1, 2, 3, 3], values: [5.5, 5.5, 5.49, 4.9, 4.92] })
+    expect(twice).toMatchObject({ standing: 'out', rules: [{ rule: 'out', level: 'out', at: 3 }] })
+  })
+
+  it('drift takes the initial apart or as the earliest entry', async () => {
+    const drift = (await findTopic('drift'))!
+    const input = { tolerance: { kind: 'shift', below: 0.5, above: 0.5 }, endTime: 26, repeatabilitySd: 0.03 }
+    const within = drift.run({ ...input, times: [0, 1, 2], values: [5.5, 5.49, 5.48] })
+    expect(drift.run({ ...input, initial: 5.5, times: [1, 2], values: [5.49, 5.48] })).toEqual(within)
+    expect(drift.run({ ...input, initial: 5.5, times: [0, 1, 2], values: [5.5, 5.49, 5.48] })).toEqual(within)
+  })
+})
+
+describe('never NaN or Infinity, whatever stands in the input', () => {
+  const wild = fc.oneof(
+    fc.double({ noNaN: true, noDefaultInfinity: true }),
+    fc.integer({ min: -3, max: 120 }),
+    fc.constantFrom(0, -0, 1e-300, 1e300, 5e-324, Number.MAX_VALUE),
+  )
+
+  /** The example with some of its numbers replaced: near enough to valid to reach the arithmetic. */
+  function twisted(value: unknown): fc.Arbitrary<unknown> {
+    if (typeof value === 'number')
+      return fc.oneof({ weight: 3, arbitrary: fc.constant(value) }, { weight: 1, arbitrary: wild })
+    if (Array.isArray(value)) return fc.tuple(...value.map(twisted))
+    if (value !== null && typeof value === 'object') {
+      return fc.record(Object.fromEntries(Object.entries(value).map(([key, inner]) => [key, twisted(inner)])))
+    }
+    return fc.constant(value)
+  }
+
+  it.each(topicNames.map((name) => [name]))('%s', async (name) => {
+    const topic = (await findTopic(name))!
+    fc.assert(
+      fc.property(twisted(topic.example.input), (input) => {
+        try {
+          expect(isFiniteThroughout(topic.run(input))).toBe(true)
+        } catch (error) {
+          if (!(error instanceof ScienceError)) throw error
+          expect(error.message).not.toMatch(/undefined|NaN/)
+        }
+      }),
+      { numRuns: 200 },
+    )
+  })
+
+  it.each(topicNames.map((name) => [name]))('%s refuses what is no input at all', async (name) => {
+    const topic = (await findTopic(name))!
+    fc.assert(
+      fc.property(fc.jsonValue(), (input) => {
+        expect(() => topic.run(input)).toThrow(ScienceError)
+      }),
+      { numRuns: 50 },
+    )
+  })
+})
+
+/** Equal up to the last digits, which differ between processors. */
+function expectClose(actual: unknown, expected: unknown, at: string): void {
+  if (typeof expected === 'number') {
+    expect(typeof actual, at).toBe('number')
+    const error = Math.abs((actual as number) - expected) / Math.max(1e-9, Math.abs(expected))
+    expect(error, `${at}: ${String(actual)} against ${expected}`).toBeLessThan(1e-9)
+  } else if (expected !== null && typeof expected === 'object') {
+    expect(Object.keys(actual as object), at).toEqual(Object.keys(expected))
+    for (const [key, value] of Object.entries(expected)) {
+      expectClose((actual as Record<string, unknown>)[key], value, `${at}.${key}`)
+    }
+  } else {
+    expect(actual, at).toBe(expected)
+  }
+}
