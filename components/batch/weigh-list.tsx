@@ -1,39 +1,66 @@
+'use client'
+
+import { useState } from 'react'
 import { gramsText, percentOffText, weighed } from '@/lib/batch/rules'
 import type { BatchPage } from '@/lib/batch/queries/get-batch'
 
 type Line = BatchPage['weighings'][number]
-type Props = { lines: Line[]; current: string | null; isOpen: boolean; onPick: (id: string) => void }
+type Props = {
+  lines: Line[]
+  current: string | null
+  isOpen: boolean
+  isBench: boolean
+  onPick: (id: string) => void
+}
 
 /** The sheet in order: what was weighed with its difference, the one in hand, what is still to weigh. */
-export function WeighList({ lines, current, isOpen, onPick }: Props) {
+export function WeighList({ lines, current, isOpen, isBench, onPick }: Props) {
+  const [isWhole, setIsWhole] = useState(false)
+  const at = lines.findIndex((line) => line.id === current)
+  // At the Bench the number in hand must stay on the screen, so only the lines about it are shown first.
+  const isWindow = isBench && at >= 0 && !isWhole
+  const from = Math.max(0, Math.min(at - 3, lines.length - 7))
+  const shown = isWindow ? lines.slice(from, from + 7) : lines
   return (
-    <table className="w-full border-collapse text-16">
-      <caption className="sr-only">Weighing sheet</caption>
-      <thead>
-        <tr className="border-b-2 border-ink">
-          <th scope="col" className="py-1.5 text-left font-700">
-            Weighed, then to weigh
-          </th>
-          <th scope="col" className="text-right font-700">
-            g
-          </th>
-          <th scope="col" className="text-right font-430">
-            off by
-          </th>
-        </tr>
-      </thead>
-      <tbody>
-        {lines.map((line) => (
-          <WeighRow
-            key={line.id}
-            line={line}
-            isCurrent={line.id === current}
-            isOpen={isOpen}
-            onPick={onPick}
-          />
-        ))}
-      </tbody>
-    </table>
+    <>
+      <table className="w-full border-collapse text-16">
+        <caption className="sr-only">Weighing sheet</caption>
+        <thead>
+          <tr className="border-b-2 border-ink">
+            <th scope="col" className="py-1.5 text-left font-700">
+              Weighed, then to weigh
+            </th>
+            <th scope="col" className="text-right font-700">
+              g
+            </th>
+            <th scope="col" className="text-right font-430">
+              off by
+            </th>
+          </tr>
+        </thead>
+        <tbody>
+          {shown.map((line) => (
+            <WeighRow
+              key={line.id}
+              line={line}
+              isCurrent={line.id === current}
+              isOpen={isOpen && !isWindow}
+              onPick={onPick}
+            />
+          ))}
+        </tbody>
+      </table>
+      {isBench && at >= 0 ? (
+        <button
+          type="button"
+          aria-expanded={isWhole}
+          onClick={() => setIsWhole(!isWhole)}
+          className="min-h-16 w-full text-left text-18 underline underline-offset-4"
+        >
+          {isWhole ? 'Only the lines about this one' : `All ${lines.length} lines, to pick another`}
+        </button>
+      ) : null}
+    </>
   )
 }
 
@@ -42,14 +69,14 @@ function WeighRow({
   isCurrent,
   isOpen,
   onPick,
-}: { line: Line; isCurrent: boolean } & Omit<Props, 'lines' | 'current'>) {
+}: { line: Line; isCurrent: boolean } & Omit<Props, 'lines' | 'current' | 'isBench'>) {
   const verdict = line.actualG === null ? null : weighed(line.targetG, line.actualG)
   return (
     <tr
       aria-current={isCurrent ? 'true' : undefined}
       className={`border-b border-hair align-middle ${isCurrent ? 'bg-typed font-650 outline-[2.5px] -outline-offset-1 outline-ink outline-solid' : ''}`}
     >
-      <th scope="row" className="p-0 text-left font-[inherit]">
+      <th scope="row" className={`p-0 text-left ${isCurrent ? 'font-700' : 'font-430'}`}>
         {isOpen ? (
           <button
             type="button"
@@ -59,7 +86,7 @@ function WeighRow({
             <Name line={line} />
           </button>
         ) : (
-          <span className="block py-2 pl-2 leading-tight">
+          <span className="block py-1.5 pl-2 leading-tight">
             <Name line={line} />
           </span>
         )}

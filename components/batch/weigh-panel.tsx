@@ -1,6 +1,7 @@
 'use client'
 
 import { useRef, useState, type FormEvent } from 'react'
+import { useWidth } from '@/components/charts/use-width'
 import { BandBar } from '@/components/marks/band-bar'
 import { Button } from '@/components/ui/button'
 import { ErrorNote } from '@/components/ui/error-note'
@@ -12,8 +13,6 @@ import { ClientError, send } from '@/lib/http/fetcher'
 import { NumberPad } from './number-pad'
 
 type Line = BatchPage['weighings'][number]
-
-export type Weight = { actualTyped: string; actualG: number | null }
 
 type Props = {
   code: string
@@ -36,6 +35,7 @@ export function WeighPanel(props: Props) {
   const [refusal, setRefusal] = useState<ClientError | null>(null)
   const [isSending, setIsSending] = useState(false)
   const noteField = useRef<HTMLInputElement>(null)
+  const [bar, barWidth] = useWidth<HTMLDivElement>(420)
   const actualG = readDecimal(weight)
   const verdict = actualG === null || actualG <= 0 ? null : weighed(line.targetG, actualG)
   const isUnreadable = weight.trim() !== '' && actualG === null
@@ -74,7 +74,7 @@ export function WeighPanel(props: Props) {
     <form
       onSubmit={(event) => void keep(event)}
       noValidate
-      className="grid gap-x-7 gap-y-5 bg-typed px-4 py-5 sm:px-7 md:grid-cols-[minmax(0,1fr)_300px]"
+      className="grid gap-x-7 gap-y-5 bg-typed px-4 py-5 sm:px-7 md:grid-cols-[minmax(0,1fr)_300px] lg:grid-cols-1"
     >
       <div className="min-w-0">
         <h2 className="text-24 font-700 leading-tight">{line.inciName.replaceAll('/', '/\u200b')}</h2>
@@ -111,9 +111,9 @@ export function WeighPanel(props: Props) {
             {verdict ? `${percentOffText(verdict.differencePercent)} of ${gramsText(line.targetG)} g` : ''}
           </p>
         </div>
-        <div className="mt-2 overflow-hidden py-1">
+        <div ref={bar} className="mt-2 py-1">
           <BandBar
-            width={420}
+            width={barWidth}
             height={14}
             lower={line.targetG - tolerance}
             upper={line.targetG + tolerance}

@@ -24,14 +24,15 @@ export function WeighPart({ batch, isBench, mayWrite, onSaved }: Props) {
   const weight = current ? (typed?.id === current.id ? typed.text : (current.actualTyped ?? '')) : ''
   const isWater = (line: { isInternal: boolean }) =>
     line.isInternal === (batch.emulsionType !== 'oil-in-water')
-  const done = lines.filter((line) => line.actualG !== null).length
   return (
     <div>
       <div className="-mx-4 flex flex-wrap items-end justify-between gap-x-8 gap-y-3 bg-recess px-4 py-3 sm:-mx-10 sm:px-10">
-        <p className="text-18">
-          <b>{done}</b> of {lines.length} lines weighed
-        </p>
-        <WeighedRow lines={lines} current={current?.id ?? null} isWater={isWater} />
+        <WeighedRow
+          lines={lines}
+          current={current?.id ?? null}
+          poured={current ? (readDecimal(weight) ?? 0) / current.targetG : 0}
+          isWater={isWater}
+        />
       </div>
       <div className="grid gap-x-10 gap-y-4 lg:grid-cols-[minmax(0,1fr)_minmax(0,1fr)]">
         <div className="grid gap-6 py-5 sm:grid-cols-[minmax(0,10fr)_minmax(0,12fr)]">
@@ -41,7 +42,13 @@ export function WeighPart({ batch, isBench, mayWrite, onSaved }: Props) {
             </div>
           ) : null}
           <div className={current ? '' : 'sm:col-span-2'}>
-            <WeighList lines={lines} current={current?.id ?? null} isOpen={isOpen} onPick={setPicked} />
+            <WeighList
+              lines={lines}
+              current={current?.id ?? null}
+              isOpen={isOpen}
+              isBench={isBench}
+              onPick={setPicked}
+            />
           </div>
         </div>
         {current ? (

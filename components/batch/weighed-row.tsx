@@ -3,10 +3,16 @@ import { gramsText } from '@/lib/batch/rules'
 import type { BatchPage } from '@/lib/batch/queries/get-batch'
 
 type Line = BatchPage['weighings'][number]
-type Props = { lines: Line[]; current: string | null; isWater: (line: Line) => boolean }
+type Props = {
+  lines: Line[]
+  current: string | null
+  /** How far the line in hand is poured, 0 to 1. */
+  poured: number
+  isWater: (line: Line) => boolean
+}
 
 /** The batch as it fills: a jar for each line on its phase's shelf, dotted while it is still to weigh. */
-export function WeighedRow({ lines, current, isWater }: Props) {
+export function WeighedRow({ lines, current, poured, isWater }: Props) {
   const phases = [...new Set(lines.map((line) => line.phase))]
   return (
     <div className="flex flex-wrap items-end gap-x-10 gap-y-3">
@@ -20,6 +26,7 @@ export function WeighedRow({ lines, current, isWater }: Props) {
                   key={line.id}
                   line={line}
                   isCurrent={line.id === current}
+                  poured={poured}
                   isWater={isWater(line)}
                 />
               ))}
@@ -35,9 +42,11 @@ export function WeighedRow({ lines, current, isWater }: Props) {
   )
 }
 
-function WeighedJar({ line, isCurrent, isWater }: { line: Line; isCurrent: boolean; isWater: boolean }) {
+type JarProps = { line: Line; isCurrent: boolean; poured: number; isWater: boolean }
+
+function WeighedJar({ line, isCurrent, poured, isWater }: JarProps) {
   if (line.actualG === null && !isCurrent) return <JarGlyph height={34} state="due" />
-  const percent = line.actualG === null ? 40 : 100
+  const percent = isCurrent ? 100 * Math.max(0, Math.min(1, poured)) : 100
   const layer = isWater ? { bottomPercent: percent } : { topPercent: percent }
   return <JarGlyph height={isCurrent ? 46 : 34} open={isCurrent} {...layer} />
 }

@@ -1,9 +1,11 @@
+import { EmulsionSection } from '@/components/charts/emulsion-section'
+import { PhiRuler } from '@/components/charts/phi-ruler'
 import type { FormulaPage } from '@/lib/formula/queries/get-formula'
 import type { FormulaCheck } from '@/lib/formula/rules/checks'
+import { innerWord } from '@/lib/formula/rules/finding'
 import { formulaTotals, type FormulaTotals } from '@/lib/formula/rules/totals'
 import type { EmulsionType } from '@/lib/formula/schema'
 import { Checks } from './checks'
-import { InsideRuler } from './inside-ruler'
 
 type Props = {
   totals: FormulaTotals
@@ -12,24 +14,50 @@ type Props = {
   emulsionType: EmulsionType
 }
 
-/** What is inside: the level, a cut through the emulsion to scale, and the questions to the formula. */
-export function InsideDrawing({ totals, before, checks }: Props) {
+/** What is inside: the level, a cut through the emulsion to scale, and the questions that point into it. */
+export function InsideDrawing({ totals, before, checks, emulsionType }: Props) {
+  const { internalVolumePercent: volume, internalMassPercent: mass } = totals
+  if (volume === null || mass === null) {
+    return (
+      <div className="min-w-0">
+        <p className="mb-6 text-15 text-soft">
+          The cut through the emulsion is drawn as soon as a line has its share and density.
+        </p>
+        <Checks checks={checks} />
+      </div>
+    )
+  }
   const was = before ? formulaTotals(before.lines).internalVolumePercent : null
   return (
     <div className="min-w-0">
-      <InsideRuler
-        percent={totals.internalVolumePercent}
-        before={before && was !== null ? { number: before.number, percent: was } : null}
+      <PhiRuler
+        phi={volume / 100}
+        before={
+          before && was !== null
+            ? { phi: was / 100, text: `${was.toFixed(1)} in version ${before.number}` }
+            : null
+        }
       />
-      <p className="mt-1 text-14 text-soft">
-        {totals.internalMassPercent === null
-          ? 'The internal phase shows here as soon as a line has its share and density.'
-          : `${totals.internalMassPercent.toFixed(1)} % w/w, ${totals.internalVolumePercent?.toFixed(1)} % v/v internal phase.`}
-        {was !== null && before ? ` Hollow: ${was.toFixed(1)} in version ${before.number}.` : ''}
-      </p>
-      <div className="mt-5">
-        <Checks checks={checks} />
+      <div className="mt-4">
+        <EmulsionSection
+          phi={volume / 100}
+          inside={innerWord(emulsionType)}
+          dropMicrometres={null}
+          height={Math.max(494, checks.length * 92)}
+          note={`By mass it is ${mass.toFixed(1)} %. The size of the drops has not been measured.`}
+          questions={checks.map((check) => ({
+            id: check.key,
+            title: check.question,
+            answer: check.answer,
+            reason: check.reason,
+            isOpen: check.isOpen,
+            at: drops.includes(check.key) ? 'drop' : 'film',
+          }))}
+        />
       </div>
     </div>
   )
 }
+
+/** Questions about what is in the drops; the others are about the film between them. */
+const drops: FormulaCheck['key'][] = ['salt', 'gel', 'agree', 'slow']

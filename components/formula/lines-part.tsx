@@ -1,6 +1,6 @@
 'use client'
 
-import { useState } from 'react'
+import { useRef, useState } from 'react'
 import { ErrorNote } from '@/components/ui/error-note'
 import { Field } from '@/components/ui/field'
 import { Select } from '@/components/ui/select'
@@ -14,6 +14,7 @@ import { LineSheet } from './line-sheet'
 import { ReadSheet } from './read-sheet'
 import { ApartJar } from './apart-jar'
 import { TotalRow } from './total-row'
+import { useRowMiddles } from './use-row-middles'
 import type { DraftHandle } from './use-draft'
 
 type Props = {
@@ -30,13 +31,15 @@ type Props = {
 export function LinesPart({ formula, handle, isOpen, totals, phases, checks, before }: Props) {
   const { draft, amounts, problems, change } = handle
   const [problem, setProblem] = useState('')
+  const sheet = useRef<HTMLDivElement>(null)
   const foot = <TotalRow totals={totals} beforeNumber={before ? (formula.before?.number ?? null) : null} />
   const lines = draft.lines.length ? draft.lines : [emptyLine(`${formula.versionId}-first`, 'A', false)]
+  const middles = useRowMiddles(sheet, lines.map((line) => line.id).join())
   return (
-    <div className="grid gap-x-10 gap-y-8 xl:grid-cols-[minmax(0,1fr)_540px]">
-      <div className="flex gap-4">
-        <ApartJar amounts={amounts} emulsionType={draft.emulsionType} />
-        <div className="min-w-0 flex-1">
+    <div className="grid gap-x-10 gap-y-8 xl:grid-cols-[minmax(0,1fr)_556px]">
+      <div className="flex">
+        <ApartJar amounts={amounts} emulsionType={draft.emulsionType} middles={middles} />
+        <div ref={sheet} className="min-w-0 flex-1">
           {isOpen ? (
             <>
               <LineSheet
