@@ -1,9 +1,12 @@
 import { readFile } from 'node:fs/promises'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { POST as startStudy } from '@/app/api/studies/route'
 import { roles, type Role } from '@/lib/auth/actor'
 import { may, permissions, type Permission } from '@/lib/auth/permissions'
+import { newId } from '@/lib/db/id'
 import { call } from '../support/call'
 import { testDatabase, type Signed, type TestDatabase } from '../support/database'
+import { initialOf, makeBatch, makeProtocol, makeStations } from '../support/running-study'
 import { allRoutes, filesNamed, paramsOf, type FoundRoute } from '../support/walk'
 
 /** What may be reached without a session, named here a second time on purpose. */
@@ -94,6 +97,35 @@ it('A05: somebody without a role may do nothing', async () => {
   const { cookie } = await t.person([])
   for (const found of routes.filter((one) => one.route.permission !== 'public'))
     expect([name(found), (await knock(found, cookie)).status]).toEqual([name(found), 403])
+})
+
+it('A05: a study of somebody else is not there for a client, at any address of it', async () => {
+  const formulator = await t.person('formulator')
+  await makeStations(formulator.actor)
+  const protocolVersionId = await makeProtocol(formulator.actor)
+  const batchId = await makeBatch(formulator.actor, { code: 'SWEEP-1' })
+  const body = { id: newId(), title: 'Not shared', protocolVersionId, batchIds: [batchId] }
+  const input = { ...body, initialReadings: initialOf(batchId) }
+  expect((await call(startStudy, { cookie: formulator.cookie, body: input })).status).toBe(200)
+  const { code } = await t.db
+    .selectFrom('study')
+    .select('code')
+    .where('id', '=', body.id)
+    .executeTakeFirstOrThrow()
+  const client = await t.person('client')
+  const open = routes.filter(
+    (found) => found.address.startsWith('/api/studies/[code]') && may(client.actor, found.route.permission),
+  )
+  expect(open.length).toBeGreaterThan(1)
+  for (const found of open) {
+    const options = {
+      method: found.method,
+      params: { code },
+      body: { isFollowing: true },
+      cookie: client.cookie,
+    }
+    expect([name(found), (await call(found.route, options)).status]).toEqual([name(found), 404])
+  }
 })
 
 it('A07: every refusal of every route carries the headers', async () => {
