@@ -32,11 +32,17 @@ export async function fillCases(
     .select('version')
     .where('id', '=', finished.id)
     .executeTakeFirstOrThrow()
-  await filling.act(liv, daysAgo(filling, 27, 9), (trx) =>
-    endStudy(trx, liv, finished.code, {
-      version: study.version,
-      reason: 'All pulls are read and the case is signed.',
-    }),
+  await filling.act(liv, daysAgo(filling, 27, 9), (trx, now) =>
+    endStudy(
+      trx,
+      liv,
+      finished.code,
+      {
+        version: study.version,
+        reason: 'All pulls are read and the case is signed.',
+      },
+      now,
+    ),
   )
   await putForward(filling, waiting, 4)
 }
