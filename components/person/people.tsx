@@ -47,10 +47,8 @@ export function People({ ownId, timeZones }: { ownId: string; timeZones: string[
         crumb="Who may do what here"
         headline={
           <>
-            <b>
-              {active.length === 1 ? 'One person keeps' : `${countWord(active.length, true)} people keep`}
-            </b>{' '}
-            this notebook
+            <b>{active.length === 1 ? 'One person' : `${countWord(active.length, true)} people`}</b>{' '}
+            {active.length === 1 ? 'keeps' : 'keep'} this notebook
             {waiting.length > 0 ? `; ${countWord(waiting.length)} invited, not yet answered` : ''}
           </>
         }

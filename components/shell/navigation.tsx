@@ -1,6 +1,6 @@
 'use client'
 
-import Link from 'next/link'
+import Link, { useLinkStatus } from 'next/link'
 import { useEffect, useRef } from 'react'
 import { isAt, type Place } from './places'
 
@@ -35,16 +35,30 @@ export function Navigation({
             key={place.href}
             href={place.href}
             aria-current={isHere ? 'page' : undefined}
-            className={`relative flex h-11 shrink-0 items-end pb-3 -outline-offset-2 ${
+            className={`relative flex h-11 shrink-0 items-end pb-1.5 -outline-offset-2 ${
               isHere
                 ? 'font-750 after:absolute after:-inset-x-0.5 after:bottom-0 after:h-1 after:bg-ink'
                 : 'hover:underline hover:underline-offset-4'
             }`}
           >
             {place.label}
+            <Coming />
           </Link>
         )
       })}
     </nav>
+  )
+}
+
+/** The page is on its way: its place on the shelf is dotted until it stands there. */
+function Coming() {
+  const { pending } = useLinkStatus()
+  if (!pending) return null
+  return (
+    <span
+      role="status"
+      aria-label="Fetching the page"
+      className="absolute -inset-x-0.5 bottom-0 border-b-4 border-dotted border-ink"
+    />
   )
 }

@@ -38,7 +38,7 @@ function DeskShell({ who, places, labName, day, isDemo, path, children }: Props 
           <Navigation
             places={places}
             path={path}
-            className="order-last -mb-[3px] w-full px-4 sm:px-10 xl:order-none xl:mr-8 xl:ml-[23px] xl:w-auto xl:flex-1 xl:px-[22px]"
+            className="order-last -mb-[3px] w-full px-4 sm:px-10 xl:order-none xl:mr-8 xl:ml-[14px] xl:w-auto xl:flex-1 xl:px-[22px]"
           />
           <div className="flex h-[41px] items-end border-b border-ink pb-[3px] pr-4 text-15 sm:pr-10 xl:border-0 xl:pr-0">
             <PersonMenu who={who} />
