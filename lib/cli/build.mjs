@@ -50,6 +50,7 @@ export async function build(root, env, say) {
   await run(process.execPath, [nextProgram(root), 'build'], {
     cwd: root,
     env: { ...env, NODE_ENV: 'production', NEXT_TELEMETRY_DISABLED: '1' },
+    onLine: (line) => say(`building: ${line.trim()}`),
     what: 'next build',
     todo: 'The lines above say which file does not build. Correct it (or undo the last change), then start again.',
     isLong: true,

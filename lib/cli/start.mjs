@@ -28,6 +28,8 @@ async function main() {
   end.with(record.release)
   recordLongRuns(record.add)
 
+  // First, since it may need a command by root: nobody should wait for the packages to be told so.
+  if (!process.env['DATABASE_URL']) await step('PostgreSQL', (say) => ensureProgram(postgresProgram, say))
   await step('Packages', (say) => installPackages(root, say))
   await step('Environment', checkEnvironment)
   const host = process.env['HOST'] || '127.0.0.1'
@@ -74,7 +76,6 @@ async function prepareDatabase(extra) {
   if (isGiven) {
     return { env, hasDemo: await prepareGivenDatabase({ root, env, wantsDemo, step }) }
   }
-  await step('PostgreSQL', (say) => ensureProgram(postgresProgram, say))
   let cluster
   await step('Database server', async (say) => {
     cluster = await openOwnCluster(say)

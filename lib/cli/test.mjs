@@ -32,9 +32,9 @@ await end.now(process.exitCode ?? 1)
 
 async function main() {
   assertNode()
-  await step('Packages', (say) => installPackages(root, say))
   await step('PostgreSQL', (say) => ensureProgram(postgresProgram, say))
   await step('Chromium', (say) => ensureProgram(chromiumProgram, say))
+  await step('Packages', (say) => installPackages(root, say))
   let cluster
   await step('Database server of the tests', async (say) => {
     const dataFolder = path.join(root, '.data', 'test')
