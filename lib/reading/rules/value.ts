@@ -99,7 +99,7 @@ function torqueValue(entry: TypedEntry, { planned, spindles }: ValueContext): En
   }
   const { mPas, errorPercent } = viscosity({ torquePercent, factor: viscosityFactor(constant, rpm) })
   return {
-    value: mPas,
+    value: computed(mPas),
     word: null,
     detail: { ...entry.detail, spindle, rpm, spindleConstant: constant, errorPercent },
   }
@@ -135,7 +135,7 @@ function layersValue(entry: TypedEntry, { jar }: ValueContext): EntryValue {
   try {
     const { percent, topPercent, bottomPercent } = separation({ totalMm, topMm, bottomMm })
     return {
-      value: percent,
+      value: computed(percent),
       word: null,
       detail: { ...entry.detail, topMm, bottomMm, totalMm, topPercent, bottomPercent },
     }
@@ -162,7 +162,7 @@ function massValue(entry: TypedEntry, { jar }: ValueContext): EntryValue {
       `The jar with its fill cannot weigh less than the empty jar, ${jar.tareG} g. Weigh it again.`,
     )
   }
-  const value = massChangePercent(jar.grossG, jar.tareG, grossG)
+  const value = computed(massChangePercent(jar.grossG, jar.tareG, grossG))
   if (value > attributeOf('mass').possible.upper) {
     throw new ImpossibleEntry(
       'detail.grossG',
@@ -194,4 +194,9 @@ function slipSentence(value: number, last: number | null): string {
   return isSlip
     ? `The last was ${last}, so perhaps the point slipped.`
     : `The last was ${last}. Type it again.`
+}
+
+/** Without the noise of binary fractions: 0.9 of 60 mm is 1.5 %, not 1.4999999999999998. */
+function computed(value: number): number {
+  return Number(value.toPrecision(12))
 }
