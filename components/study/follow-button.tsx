@@ -26,7 +26,7 @@ export function FollowButton({ code, isFollowing }: { code: string; isFollowing:
   }
 
   return (
-    <Button busy={busy} aria-pressed={follows} onClick={press}>
+    <Button kind="link" busy={busy} aria-pressed={follows} onClick={press}>
       {follows ? 'Following' : 'Follow'}
     </Button>
   )

@@ -46,10 +46,15 @@ function rowOf(shelf: SheetShelf, sheet: SheetPage, flags: SheetPage['flags']): 
     leavesLow: shelf.leavesAt?.low ?? null,
     leavesHigh: shelf.leavesAt?.high ?? null,
     remark:
-      shelf.standing === 'steady' && nearest && nearest.used > 0.005
+      shelf.standing === 'steady' && nearest && nearest.used > 0.005 && hasUnspentTime(sheet)
         ? `Nearest its edge: ${inSentence(nearest.attribute)}, ${Math.round(nearest.used * 100)} % of the band used`
         : null,
   }
+}
+
+/** A remark stands in the unspent time; where little is left it would be cut off. */
+function hasUnspentTime({ todayWeeks, study }: SheetPage): boolean {
+  return todayWeeks !== null && todayWeeks / study.endWeeks < 0.7
 }
 
 function noteOf({ station }: SheetShelf): string {

@@ -18,7 +18,9 @@ export function StudyActs({ study }: { study: ShownStudy }) {
   if (study.state !== 'running') return null
   return (
     <>
-      <Button onClick={() => setIsEnding(true)}>End the study</Button>
+      <Button kind="link" onClick={() => setIsEnding(true)}>
+        End the study
+      </Button>
       <EndDialog study={study} isOpen={isEnding} onClose={() => setIsEnding(false)} />
     </>
   )

@@ -52,19 +52,19 @@ export function StudyHeading({ study, batches, part, rights, headline, sentence,
         ...(rights.maySeeRecord ? [tab('record', 'Record', '/record')] : []),
       ]}
       acts={
-        <>
+        <span className="flex flex-wrap items-center gap-x-5">
           {acts}
           <FollowButton code={study.code} isFollowing={study.isFollowing} />
           {rights.mayPutForward ? (
             <Link
               href={`/cases/new?study=${encodeURIComponent(study.code)}`}
               className="btn"
-              data-kind="secondary"
+              data-kind="link"
             >
               Put a shelf-life case forward
             </Link>
           ) : null}
-        </>
+        </span>
       }
     />
   )
@@ -82,7 +82,9 @@ function Crumb({ study, batches, rights }: Pick<Props, 'study' | 'batches' | 'ri
         </span>
       ))}
       {first ? `: ${first.formulaName}, ${inside(first)}. ` : '. '}
-      {study.title}, {span(study.endWeeks)}, begun {spokenDay(study.startedOn)}
+      {study.title}
+      {/\d (weeks|months)/.test(study.title) ? '' : `, ${span(study.endWeeks)}`}, begun{' '}
+      {spokenDay(study.startedOn)}
       {study.endedOn ? `, ended ${spokenDay(study.endedOn)}` : ''}
     </>
   )

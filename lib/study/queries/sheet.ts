@@ -23,7 +23,7 @@ export async function getSheet(db: Db, actor: Actor, code: string) {
   const stations = await listStudyStations(db, study.id)
   const batches = await listStudyBatches(db, study.id)
   const pullJars = await listStudyPullJars(db, study.id)
-  const series = await listStudySeries(db, study.id)
+  const series = inPlanOrder(await listStudySeries(db, study.id), study)
   const flags = await listOpenFlags(db, study.id)
   const readings = await listCurrentReadings(db, study.id)
   const means = await listStationMeans(db, study.id)
@@ -58,6 +58,12 @@ export async function getSheet(db: Db, actor: Actor, code: string) {
 }
 export type SheetPage = Awaited<ReturnType<typeof getSheet>>
 export type SheetShelf = SheetPage['shelves'][number]['rows'][number]
+
+/** Attributes stand in the order in which the protocol measures them. */
+function inPlanOrder(series: SeriesRow[], { plan }: StudyHead): SeriesRow[] {
+  const order = plan.attributes.map((one) => one.attribute as string)
+  return series.toSorted((a, b) => order.indexOf(a.attribute) - order.indexOf(b.attribute))
+}
 
 function leaving(separation: SeriesRow | undefined) {
   if (separation?.standing !== 'leaning' || separation.leavesAtWeeks === null) return null
@@ -103,7 +109,7 @@ export function findingOf(page: {
     })),
     series,
     batchCodes: batches.map((batch) => batch.code),
-    openFlags: flags.length,
+    flags,
     today: { due: todays.length, done: todays.filter((jar) => jar.state === 'done').length },
     nextPullOn: next ?? null,
   })

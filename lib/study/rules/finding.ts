@@ -26,7 +26,8 @@ export type FindingInput = {
   stations: FindingStation[]
   series: FindingSeries[]
   batchCodes: string[]
-  openFlags: number
+  /** What waits for an answer; a rule that fired and is not confirmed yet is a finding too. */
+  flags: { studyStationId: string | null; attribute: string; rule: string }[]
   /** Jars asked for today, and those of them that are read. */
   today: { due: number; done: number }
   nextPullOn: string | null
@@ -46,7 +47,7 @@ export function studyFinding(input: FindingInput): Finding {
       ? outHeadline(input, outs, leans)
       : leans.length > 0
         ? leanHeadline(input, leans)
-        : calm(input)
+        : (beginning(input) ?? calm(input))
   const told = outs.length > 0 || leans.length > 0 ? steadySentence(input) : nearestSentence(input)
   return { headline, sentence: [told, waitingSentence(input)].filter(Boolean).join(' ') }
 }
@@ -116,6 +117,24 @@ function leanHeadline(input: FindingInput, leans: Found[]): Phrase[] {
     ...(leaves === null
       ? []
       : [plain(`, out about ${spokenDay(addDays(input.startedOn, Math.round(leaves * 7)))}`)]),
+  ]
+}
+
+/** Nothing is out or leaning, yet a reading lies beyond its band unconfirmed, or separation has begun. */
+function beginning({ stations, flags }: FindingInput): Phrase[] | null {
+  const first = (rule: string) =>
+    flags
+      .filter((flag) => flag.rule === rule)
+      .toSorted((a, b) => Number(b.attribute === 'separation') - Number(a.attribute === 'separation'))[0]
+  const beyond = first('out')
+  const flag = beyond ?? first('onset')
+  const station = stations.find((one) => one.id === flag?.studyStationId)
+  if (!flag || !station) return null
+  if (!beyond) return [plain('Separation has begun '), ...place(station)]
+  return [
+    plain(`${attributeName(beyond.attribute)} was read beyond its band `),
+    ...place(station),
+    plain(', not confirmed yet'),
   ]
 }
 
@@ -202,9 +221,9 @@ function nearestSentence(input: FindingInput): string {
   return `Nearest its edge: ${inSentence(nearest.attribute)} ${where}, ${Math.round(nearest.used! * 100)} % of the band used.`
 }
 
-function waitingSentence({ openFlags, today, nextPullOn, state }: FindingInput): string {
+function waitingSentence({ flags: open, today, nextPullOn, state }: FindingInput): string {
   const flags =
-    openFlags > 0 ? `${counted(openFlags, 'flag')} ${openFlags === 1 ? 'wants' : 'want'} an answer` : ''
+    open.length > 0 ? `${counted(open.length, 'flag')} ${open.length === 1 ? 'wants' : 'want'} an answer` : ''
   if (state === 'closed') return flags ? `${capital(flags)}.` : 'The study has ended.'
   const jars =
     today.due > 0

@@ -169,6 +169,6 @@ function headline(total: number, out: number, leaning: number, filter: StudyFilt
       ` ${kind}${studies} ${leaning === 1 ? 'is' : 'are'} leaning, none is out`,
     ]
   }
-  if (total === 1) return ['The one study', ` ${kind}holds: nothing leans`]
-  return [`All ${numberWord(total)}`, ` ${kind}${studies} hold: none is out, none is leaning`]
+  if (total === 1) return ['The one study', ' is neither out nor leaning']
+  return [`None of ${numberWord(total)}`, ` ${kind}${studies} is out or leaning`]
 }
