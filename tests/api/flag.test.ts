@@ -1,3 +1,6 @@
+import { mkdtemp, readdir, readFile, rm } from 'node:fs/promises'
+import { tmpdir } from 'node:os'
+import path from 'node:path'
 import { sql } from 'kysely'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { POST as log } from '@/app/api/pulls/[id]/readings/route'
@@ -8,7 +11,10 @@ import { POST as answer } from '@/app/api/flags/[number]/answer/route'
 import { POST as close } from '@/app/api/flags/[number]/close/route'
 import { POST as comment } from '@/app/api/flags/[number]/comments/route'
 import { POST as setAside } from '@/app/api/flags/[number]/set-aside/route'
+import { systemActor } from '@/lib/auth/actor'
 import { newId } from '@/lib/db/id'
+import { jobs } from '@/lib/flag/jobs'
+import { startMailFake } from '@/lib/mail/fake'
 import {
   askedJars,
   benchStudy,
@@ -254,6 +260,34 @@ describe('raising and clearing', () => {
     expect(mended.status).toBe(200)
     const open = (await flagsOf(study)).filter((flag) => flag.state === 'open' && flag.attribute === 'ph')
     expect(open).toHaveLength(0)
+  })
+
+  it('the mail tells each follower what is still open, with its sentence and link', async () => {
+    const folder = await mkdtemp(path.join(tmpdir(), 'stillstand-flags-'))
+    process.env['STILLSTAND_FILES'] = path.join(folder, 'files')
+    const fake = await startMailFake()
+    try {
+      const { study, jars } = await begin()
+      const jar = jarAt(jars, 45, 1, 'watch')
+      const kept = await send(jar, layered(study, jar, 2, 4))
+      const [flagMail] = jobs
+      const context = { db: t.db, actor: systemActor(), jobId: newId() }
+      const since = new Date(Date.now() - 60_000).toISOString()
+      await flagMail!.handle(context, { studyId: study.studyId, since })
+      await flagMail!.handle(context, {
+        studyId: study.studyId,
+        since: new Date(Date.now() + 60_000).toISOString(),
+      })
+      const files = await readdir(path.join(folder, 'mail'))
+      expect(files).toHaveLength(1)
+      const mail = JSON.parse(await readFile(path.join(folder, 'mail', files[0]!), 'utf8'))
+      expect(mail.to).toEqual([formulator.actor.email])
+      expect(mail.text).toContain(kept.raised[0].sentence)
+      expect(mail.text).toContain(`/flags/${kept.raised[0].number}`)
+    } finally {
+      await fake.close()
+      await rm(folder, { recursive: true, force: true })
+    }
   })
 
   it('separation in two pulls in a row has begun', async () => {
