@@ -45,7 +45,7 @@ export const style = StyleSheet.create({
 })
 
 /** One sheet of the report: the logo on its line, which case and page, and what the report is not. */
-export function PageFrame({ code, children }: { code: string; children: ReactNode }) {
+export function PageFrame({ code, children }: { code: string; children?: ReactNode }) {
   return (
     <Page size="A4" style={style.page}>
       <View style={style.head} fixed>

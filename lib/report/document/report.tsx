@@ -1,4 +1,4 @@
-import { createElement } from 'react'
+import { createElement, type ReactElement } from 'react'
 import { Document, renderToBuffer } from '@react-pdf/renderer'
 import { registerFonts } from '@/lib/report/document/fonts'
 import { FirstPage } from '@/lib/report/document/first-page'
@@ -28,6 +28,7 @@ export async function renderReport(input: ReportInput): Promise<Uint8Array> {
   registerFonts()
   const at = new Date(input.signatures.at(-1)?.signedAt ?? input.content.putForward.at)
   const { code } = input.content.case
+  const page = (key: string, content: ReactElement) => createElement(PageFrame, { code, key }, content)
   const document = createElement(
     Document,
     {
@@ -40,17 +41,9 @@ export async function renderReport(input: ReportInput): Promise<Uint8Array> {
       creationDate: at,
       modificationDate: at,
     },
-    createElement(PageFrame, { code, key: 'first', children: createElement(FirstPage, input) }),
-    createElement(PageFrame, {
-      code,
-      key: 'evidence',
-      children: createElement(EvidencePages, { content: input.content }),
-    }),
-    createElement(PageFrame, {
-      code,
-      key: 'readings',
-      children: createElement(ReadingPages, { content: input.content }),
-    }),
+    page('first', createElement(FirstPage, input)),
+    page('evidence', createElement(EvidencePages, { content: input.content })),
+    page('readings', createElement(ReadingPages, { content: input.content })),
   )
   return new Uint8Array(await renderToBuffer(document))
 }

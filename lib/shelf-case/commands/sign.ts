@@ -8,7 +8,7 @@ import { enqueue } from '@/lib/jobs/enqueue'
 import { assertVersion, findForUpdate } from '@/lib/shelf-case/commands/draft'
 import { readingAuthors } from '@/lib/shelf-case/queries/read'
 import { assertMaySign, assertState } from '@/lib/shelf-case/rules/refusals'
-import { signatureHash } from '@/lib/shelf-case/rules/signature'
+import { signatureHash } from '@/lib/shelf-case/queries/signature'
 import type { CaseSignature } from '@/lib/shelf-case/schema'
 
 /**

@@ -4,7 +4,7 @@ import { isClientOnly, type Actor } from '@/lib/auth/actor'
 import { refuse } from '@/lib/http/errors'
 import { caseStation, computeCase } from '@/lib/shelf-case/rules/build'
 import type { CaseContent } from '@/lib/shelf-case/rules/content'
-import { signatureHash, type SignedFacts } from '@/lib/shelf-case/rules/signature'
+import { signatureHash, type SignedFacts } from '@/lib/shelf-case/queries/signature'
 import { loadEvidence, loadTemperatures } from '@/lib/shelf-case/queries/evidence'
 
 export type CaseRow = Awaited<ReturnType<typeof listCases>>[number]

@@ -60,7 +60,7 @@ export function computeCase(
     evidence.batches.flatMap((b) => {
       const found = atStation.find((s) => s.batchId === b.id && s.attribute === attribute)
       if (!found) return []
-      const counted = new Set(found.finding.points.filter((p) => p.counted).flatMap((p) => p.readingIds))
+      const counted = new Set(found.finding.points.flatMap((p) => p.countedIds))
       return {
         batch: b.code,
         finding: found.finding,
@@ -216,7 +216,9 @@ function readingTable(
   weeksOf: (iso: string) => number,
 ): ReadingEvidence[] {
   const uncounted = new Set(
-    evidence.series.flatMap((s) => s.finding.points.filter((p) => !p.counted).flatMap((p) => p.readingIds)),
+    evidence.series.flatMap((s) =>
+      s.finding.points.flatMap((p) => p.readingIds.filter((id) => !p.countedIds.includes(id))),
+    ),
   )
   return evidence.readings.map((r) => ({
     batch: evidence.batches.find((b) => b.id === r.batchId)?.code ?? '',
