@@ -68,7 +68,9 @@ function testEnv() {
   return { ...Object.fromEntries(kept), NEXT_TELEMETRY_DISABLED: '1', CI: 'true', NO_COLOR: '1' }
 }
 
-const tool = (name) => path.join(root, 'node_modules', '.bin', name)
+function tool(name) {
+  return path.join(root, 'node_modules', '.bin', name)
+}
 
 /** A check that passes or fails as a whole; a failed one counts as one failed. */
 async function check(title, env, name, args, before = async () => undefined) {
