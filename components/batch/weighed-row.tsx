@@ -46,6 +46,7 @@ type JarProps = { line: Line; isCurrent: boolean; poured: number; isWater: boole
 
 function WeighedJar({ line, isCurrent, poured, isWater }: JarProps) {
   if (line.actualG === null && !isCurrent) return <JarGlyph height={34} state="due" />
+  if (isCurrent && poured <= 0) return <JarGlyph height={46} state="due" />
   const percent = isCurrent ? 100 * Math.max(0, Math.min(1, poured)) : 100
   const layer = isWater ? { bottomPercent: percent } : { topPercent: percent }
   return <JarGlyph height={isCurrent ? 46 : 34} open={isCurrent} {...layer} />

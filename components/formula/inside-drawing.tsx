@@ -27,6 +27,8 @@ export function InsideDrawing({ totals, before, checks, emulsionType }: Props) {
       </div>
     )
   }
+  const pointing = checks.filter((check) => !beside.includes(check.key))
+  const others = checks.filter((check) => beside.includes(check.key))
   const was = before ? formulaTotals(before.lines).internalVolumePercent : null
   return (
     <div className="min-w-0">
@@ -43,9 +45,9 @@ export function InsideDrawing({ totals, before, checks, emulsionType }: Props) {
           phi={volume / 100}
           inside={innerWord(emulsionType)}
           dropMicrometres={null}
-          height={Math.max(494, checks.length * 92)}
+          height={Math.max(494, pointing.length * 118)}
           note={`By mass it is ${mass.toFixed(1)} %. The size of the drops has not been measured.`}
-          questions={checks.map((check) => ({
+          questions={pointing.map((check) => ({
             id: check.key,
             title: check.question,
             answer: check.answer,
@@ -55,9 +57,16 @@ export function InsideDrawing({ totals, before, checks, emulsionType }: Props) {
           }))}
         />
       </div>
+      {others.length ? (
+        <div className="mt-6">
+          <Checks checks={others} />
+        </div>
+      ) : null}
     </div>
   )
 }
 
 /** Questions about what is in the drops; the others are about the film between them. */
-const drops: FormulaCheck['key'][] = ['salt', 'gel', 'agree', 'slow']
+const drops: FormulaCheck['key'][] = ['gel', 'slow']
+/** Five questions fit beside the drawing; what is dissolved in the drops cannot be pointed at. */
+const beside: FormulaCheck['key'][] = ['salt', 'agree']

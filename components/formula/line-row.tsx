@@ -47,7 +47,8 @@ export function LineRow({ line, errors, remainder, was, onChange, onPick, onAdd,
           error={errors.function}
           list="formula-functions"
           onText={(text) => onChange({ function: text })}
-          className="text-14 text-soft focus:text-ink"
+          title={line.function.length > 13 ? line.function : undefined}
+          className="text-13 text-soft focus:text-ink"
         />
       </td>
       <td className="whitespace-nowrap py-0.5 text-right align-middle text-13">

@@ -209,7 +209,7 @@ export function LineSheet({
 }
 
 /** After the INCI name: function, was, % w/w, g/mL, per kg, in, acts. */
-const columnWidths = [118, 62, 72, 58, 60, 34, 80]
+const columnWidths = [112, 52, 66, 54, 56, 30, 74]
 
 function wasShare(line: TypedLine, remainder: number, before: Map<string, string> | null): string | null {
   if (!before || !line.inciName.trim()) return null

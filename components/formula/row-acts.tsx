@@ -27,7 +27,7 @@ function Act({ label, onPress, path }: { label: string; onPress?: () => void; pa
       title={label}
       aria-disabled={onPress ? undefined : true}
       onClick={onPress}
-      className={`grid h-8 w-[26px] place-items-center rounded ${onPress ? 'hover:bg-recess' : 'opacity-40'}`}
+      className={`grid h-8 w-6 place-items-center rounded ${onPress ? 'hover:bg-recess' : 'opacity-40'}`}
     >
       <svg viewBox="0 0 14 14" width="14" height="14" aria-hidden>
         <path d={path} fill="none" stroke="currentColor" strokeWidth="1.75" />
