@@ -1,0 +1,120 @@
+import AxeBuilder from '@axe-core/playwright'
+import type { Page } from '@playwright/test'
+import type { DemoPerson } from '@/fixtures/demo/people'
+import { filesNamed } from '../support/walk'
+import { openAs } from './people'
+import { expect, test } from './watch'
+
+type Visit = {
+  /** As the folder of the page is called under app. */
+  page: string
+  who: DemoPerson | null
+  /** The address, or the list and the link to follow from there where only the application knows it. */
+  at: string | { from: string; link: RegExp }
+  phone?: true
+  status?: number
+}
+
+/** Every page of app, as somebody whose page it is. */
+const visits: Visit[] = [
+  { page: '', who: 'mada', at: '/' },
+  { page: 'sign-in', who: null, at: '/sign-in', phone: true },
+  { page: 'setup', who: null, at: '/setup' },
+  { page: 'reset', who: null, at: '/reset' },
+  { page: 'reset/[token]', who: null, at: '/reset/worn-out' },
+  { page: 'invitation/[token]', who: null, at: '/invitation/worn-out' },
+  { page: 'bench', who: 'jos', at: '/bench', phone: true },
+  { page: 'bench/[code]', who: 'jos', at: { from: '/bench', link: /look, stays sealed/ }, phone: true },
+  { page: 'bench/[code]', who: 'jos', at: { from: '/bench', link: /opened once/ } },
+  { page: 'studies', who: 'liv', at: '/studies', phone: true },
+  { page: 'studies', who: 'liv', at: '/studies?is=closed' },
+  { page: 'studies/new', who: 'liv', at: '/studies/new' },
+  { page: 'studies/[code]', who: 'liv', at: '/studies/S-004', phone: true },
+  { page: 'studies/[code]', who: 'pell', at: '/studies/S-001' },
+  { page: 'studies/[code]/curves', who: 'liv', at: '/studies/S-004/curves', phone: true },
+  { page: 'studies/[code]/readings', who: 'rune', at: '/studies/S-004/readings' },
+  { page: 'studies/[code]/jars', who: 'mada', at: '/studies/S-005/jars' },
+  { page: 'studies/[code]/labels', who: 'mada', at: '/studies/S-005/labels' },
+  { page: 'studies/[code]/record', who: 'rune', at: '/studies/S-005/record' },
+  { page: 'formulas', who: 'liv', at: '/formulas' },
+  { page: 'formulas/new', who: 'liv', at: '/formulas/new' },
+  { page: 'formulas/[code]', who: 'liv', at: '/formulas/N86' },
+  { page: 'batches', who: 'liv', at: '/batches' },
+  { page: 'batches/[code]', who: 'liv', at: '/batches/N86-1' },
+  { page: 'protocols', who: 'liv', at: '/protocols' },
+  { page: 'protocols/[code]', who: 'liv', at: { from: '/protocols', link: /^P-/ } },
+  { page: 'stations', who: 'hedda', at: '/stations' },
+  { page: 'stations/[id]', who: 'hedda', at: { from: '/stations', link: /oven 3/ } },
+  { page: 'instruments', who: 'hedda', at: '/instruments' },
+  { page: 'instruments/[id]', who: 'hedda', at: { from: '/instruments', link: /^V1$/ } },
+  { page: 'cases', who: 'rune', at: '/cases' },
+  { page: 'cases/new', who: 'liv', at: '/cases/new?study=S-003' },
+  { page: 'cases/[code]', who: 'rune', at: '/cases/C-002', phone: true },
+  { page: 'reports', who: 'pell', at: '/reports', phone: true },
+  { page: 'people', who: 'hedda', at: '/people' },
+  { page: 'mails', who: 'hedda', at: '/mails' },
+  { page: 'profile', who: 'hedda', at: '/profile' },
+  { page: 'not-there', who: 'liv', at: '/not-there', status: 404 },
+]
+
+for (const visit of visits) {
+  const address = typeof visit.at === 'string' ? visit.at : `${visit.page} from ${visit.at.from}`
+  test(`A07: ${address} as ${visit.who ?? 'a stranger'} keeps the policy, and axe finds nothing in either theme`, async ({
+    page,
+    watch,
+  }) => {
+    if (visit.status) watch.expectRefusal(/\/not-there$/, visit.status)
+    await go(page, visit)
+    await expect(page.getByRole('heading', { level: 1 })).toHaveCount(1)
+    await expect(page.getByRole('main')).toHaveCount(1)
+    expect(await findings(page), 'light').toEqual([])
+    // The themes differ in colours alone.
+    await setTheme(page, 'dark')
+    expect(await findings(page, ['color-contrast', 'link-in-text-block']), 'dark').toEqual([])
+    if (!visit.phone) return
+    await page.setViewportSize({ width: 390, height: 844 })
+    expect(await findings(page), 'dark, on a phone').toEqual([])
+    expect(await overflow(page), 'nothing sticks out sideways').toBeLessThanOrEqual(0)
+  })
+}
+
+test('A07: every page of app is among those that are looked at', async () => {
+  const pages = (await filesNamed('page.tsx')).map((file) =>
+    file
+      .replace(/^app\//, '')
+      .replace(/\/?page\.tsx$/, '')
+      .replace(/\([^)]*\)\/?/g, ''),
+  )
+  const looked = new Set(visits.map((visit) => visit.page))
+  expect(pages.filter((page) => !looked.has(page))).toEqual([])
+})
+
+async function go(page: Page, { who, at }: Visit) {
+  const first = typeof at === 'string' ? at : at.from
+  if (who) await openAs(page, who, first)
+  else await page.goto(first)
+  if (typeof at === 'string') return
+  await page
+    .getByRole('link', { name: at.link })
+    .or(page.getByRole('button', { name: at.link }))
+    .first()
+    .click()
+  await page.waitForURL((url) => url.pathname !== at.from)
+}
+
+async function findings(page: Page, rules?: string[]) {
+  const axe = new AxeBuilder({ page })
+  const { violations } = await (rules ? axe.withRules(rules) : axe).analyze()
+  return violations.map(({ id, nodes }) => ({
+    id,
+    at: nodes.map((node) => `${node.target.join(' ')}: ${node.failureSummary}`),
+  }))
+}
+
+/** As the person's menu does it. */
+async function setTheme(page: Page, theme: 'dark' | 'light') {
+  await page.evaluate((name) => document.documentElement.setAttribute('data-theme', name), theme)
+}
+
+const overflow = (page: Page) =>
+  page.evaluate(() => document.documentElement.scrollWidth - document.documentElement.clientWidth)

@@ -1,0 +1,149 @@
+import type { Page } from '@playwright/test'
+import { pressIn } from '../people'
+import { expect, test } from '../watch'
+
+/** A silicone-free water-in-oil cream with 88 % water phase; "qs" fills up to 100. */
+const lines: [phase: 'A' | 'B', name: string, share: string][] = [
+  ['A', 'PEG-30 Dipolyhydroxystearate', '3'],
+  ['A', 'Caprylic/Capric Triglyceride', '6'],
+  ['A', 'Isoamyl Laurate', '3'],
+  ['B', 'Aqua', 'qs'],
+  ['B', 'Glycerin', '5'],
+  ['B', 'Magnesium Sulfate', '0.7'],
+  ['B', 'Phenoxyethanol', '0.8'],
+]
+/** By hand: 86.77 mL inside of 99.80 mL. */
+const insideVolume = '86.9 %'
+/** By hand: 4 stations of 1 + 9 + 1 jars, 1 + 5 + 1 in freeze-thaw, 1 for the initial and 2 retained, 30 g each. */
+const jars = 54
+const gramsNeeded = (jars * 30) / 0.97
+
+test('The story, formulator: from a formula by batch and protocol to standing jars with labels', async ({
+  page,
+}) => {
+  await pressIn(page, 'liv')
+  await expect(page).toHaveURL(/\/studies$/)
+  await test.step('writes a formula and sees what is inside while typing', () => writeFormula(page))
+  await test.step('makes two batches', async () => {
+    await makeBatch(page, 1000, 950)
+    await makeBatch(page, 1900, 1850)
+  })
+  await test.step('takes a ready-made protocol', async () => {
+    await page.getByRole('link', { name: 'Protocols', exact: true }).click()
+    await page.getByRole('button', { name: 'Take a ready-made one' }).click()
+    const dialog = page.getByRole('dialog')
+    await dialog.getByRole('radio', { name: 'Prototype screen, 12 weeks' }).check()
+    await dialog.getByLabel('On what').selectOption({ label: 'high-internal-phase cream' })
+    await dialog.getByRole('button', { name: 'Take it' }).click()
+    await expect(page.getByRole('heading', { level: 1 })).toHaveText(/: 54 jars a batch$/)
+  })
+  await test.step('is refused what the batch cannot fill, then starts', () => startStudy(page))
+  await test.step('prints the labels', async () => {
+    await page.getByRole('link', { name: 'Print the labels' }).click()
+    await expect(page.getByRole('heading', { level: 1 })).toHaveText(/^54 labels/)
+    await expect(page.getByRole('img', { name: /^Square of jar [0-9A-Z]{5}$/ })).toHaveCount(jars)
+  })
+})
+
+async function writeFormula(page: Page) {
+  await page.getByRole('link', { name: 'Formulas', exact: true }).click()
+  await page.getByRole('link', { name: 'Write a formula' }).click()
+  await page.getByLabel('Code').fill('W88')
+  await page.getByLabel('Name').fill('silicone-free cream')
+  await page.getByLabel('Emulsion type').selectOption('water-in-oil')
+  await page.getByRole('button', { name: 'Write its lines' }).click()
+  await expect(page).toHaveURL(/\/formulas\/W88$/)
+  const finding = page.getByRole('heading', { level: 1 })
+  for (const [index, [phase, name, share]] of lines.entries()) {
+    if (index > 0)
+      await page
+        .getByRole('button', { name: new RegExp(`^Add (line to )?phase ${phase}$`) })
+        .first()
+        .click()
+    await page.getByRole('combobox', { name: `INCI name of this line, phase ${phase}` }).fill(name)
+    await page.getByRole('option', { name: new RegExp(`^${name.replaceAll('/', '\\/')}`) }).click()
+    await page.getByRole('textbox', { name: `% w/w of ${name}`, exact: true }).fill(share)
+    if (index === 2) await expect(page.getByText('88.00 % missing to 100', { exact: true })).toBeVisible()
+    if (index === 3) await expect(finding).toHaveText(/% water inside, past the closest packing$/)
+  }
+  await expect(finding).toHaveText(`${insideVolume} water inside, past the closest packing`)
+  await expect(page.getByText('By mass it is 88.0 %.')).toBeVisible()
+  await save(page)
+  await page.getByRole('link', { name: /^Process/ }).click()
+  for (const [number, phase, instruction] of [
+    [1, 'B into A', 'Add the water slowly under low shear.'],
+    [2, '', 'Go on stirring until smooth.'],
+  ] as const) {
+    await page.getByRole('button', { name: 'Add step' }).click()
+    await page.getByRole('textbox', { name: `phase of step ${number}` }).fill(phase)
+    await page.getByRole('textbox', { name: `what is done of step ${number}` }).fill(instruction)
+    await page.getByRole('textbox', { name: `rpm of step ${number}` }).fill('300')
+  }
+  await save(page)
+}
+
+async function save(page: Page) {
+  const saved = page.waitForResponse((answer) => answer.request().method() === 'PUT')
+  await page.getByRole('button', { name: 'Save the draft' }).click()
+  expect((await saved).status()).toBe(200)
+}
+
+async function makeBatch(page: Page, sizeG: number, yieldG: number) {
+  await page.goto('/formulas/W88')
+  await page.getByRole('button', { name: 'Make a batch' }).click()
+  await page.getByRole('dialog').getByLabel('Size').fill(String(sizeG))
+  await page.getByRole('dialog').getByRole('button', { name: 'Make the batch' }).click()
+  await expect(page).toHaveURL(/\/batches\/W88-\d$/)
+  for (const [, name, share] of lines) {
+    const percent = share === 'qs' ? 81.5 : Number(share)
+    const weight = page.getByRole('textbox', { name: `Weight of ${name} in g` })
+    await weight.fill(((sizeG * percent) / 100).toFixed(2))
+    await expect(page.getByText('Within what is allowed')).toBeVisible()
+    await weight.press('Enter')
+  }
+  for (const number of [1, 2]) {
+    const done = page.getByRole('button', { name: `Step ${number} is done` })
+    await expect(done).toBeVisible()
+    await page.getByLabel('Speed').fill('310')
+    await page.getByLabel('Time').fill('44')
+    await page.getByLabel('Temperature').fill('27.5')
+    await done.click()
+  }
+  await page.getByLabel('Yield').fill(String(yieldG))
+  await page.getByLabel('Jar and closure').fill('screw cap')
+  await page.getByRole('button', { name: 'Made, let it rest' }).click()
+  await page.getByLabel('Tested by').selectOption('conductivity')
+  await page.getByLabel('It showed').selectOption('water-in-oil')
+  await page.getByLabel('Conductivity').fill('0.4')
+  await page.getByRole('button', { name: 'Keep the result' }).click()
+  await expect(page.getByRole('heading', { level: 1 })).toHaveText('Water-in-oil, as designed')
+  await page.getByLabel('Reason').fill('Smooth after an hour; a screen may start on it today.')
+  await page.getByRole('button', { name: /^Release W88-/ }).click()
+  await expect(page.getByRole('heading', { level: 1 })).toHaveText(/ g released for jars$/)
+}
+
+async function startStudy(page: Page) {
+  await page.getByRole('link', { name: 'Start a study' }).click()
+  const finding = page.getByRole('heading', { level: 1 })
+  const start = page.getByRole('button', { name: 'Start the study' })
+  await page.getByRole('checkbox', { name: /^W88-1 / }).check()
+  const missing = Math.ceil(gramsNeeded - 950)
+  await expect(finding).toHaveText(`${missing} g are missing, so this study cannot start`)
+  await expect(start).toHaveAttribute('aria-disabled', 'true')
+  await expect(start).toHaveAccessibleDescription(`${missing} g short.`)
+
+  await page.getByRole('checkbox', { name: /^W88-1 / }).uncheck()
+  await page.getByRole('checkbox', { name: /^W88-2 / }).check()
+  await expect(finding).toHaveText('54 jars will stand')
+  await page.getByLabel('Title').fill('Silicone-free cream W88, screen')
+  const initial = page.getByRole('region', { name: 'Initial readings' })
+  await initial.getByLabel('Instrument for pH').selectOption({ index: 1 })
+  await initial.getByRole('textbox').first().fill('5,42')
+  await initial.getByLabel('Instrument for Viscosity').selectOption({ index: 1 })
+  await initial.getByRole('textbox').last().fill('61.5')
+  // 61.5 % of the 100 000 mPa·s that T-bar C reaches at 10 rpm.
+  await expect(initial.getByText(/^61.500 mPa·s$/)).toBeVisible()
+  await start.click()
+  await expect(page).toHaveURL(/\/studies\/S-\d+\/jars$/)
+  await expect(finding).toHaveText(/^\d+ of 54 jars still stand/)
+}
