@@ -2,6 +2,7 @@
 
 import { useState, type FormEvent } from 'react'
 import { mutate } from 'swr'
+import { keep } from '@/components/session/keep'
 import { Button } from '@/components/ui/button'
 import { ErrorNote } from '@/components/ui/error-note'
 import { Field } from '@/components/ui/field'
@@ -20,7 +21,7 @@ export function Clients({ clients }: { clients: ClientRow[] }) {
     setSending(true)
     setError(null)
     try {
-      await send(clientsKey, 'POST', draft)
+      await keep(() => send(clientsKey, 'POST', draft), { what: 'another client', text: draft.name })
       setDraft({ id: newId(), name: '' })
       await mutate(clientsKey)
     } catch (thrown) {

@@ -2,6 +2,7 @@
 
 import { useState, type FormEvent } from 'react'
 import useSWR from 'swr'
+import { keep } from '@/components/session/keep'
 import { Button } from '@/components/ui/button'
 import { ErrorNote } from '@/components/ui/error-note'
 import { Field } from '@/components/ui/field'
@@ -28,7 +29,10 @@ export function LabForm({ timeZones }: { timeZones: string[] }) {
     setSending(true)
     setError(null)
     try {
-      await send(labKey, 'PATCH', { version: lab.version, name: shown.name, timeZone: shown.timeZone })
+      await keep(
+        () => send(labKey, 'PATCH', { version: lab.version, name: shown.name, timeZone: shown.timeZone }),
+        { what: 'name and time zone of the lab', text: shown.name },
+      )
       await mutate()
       setDraft(null)
       toast('The lab is changed')

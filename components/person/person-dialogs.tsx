@@ -1,6 +1,7 @@
 'use client'
 
 import { useState, type FormEvent } from 'react'
+import { keep } from '@/components/session/keep'
 import { Button } from '@/components/ui/button'
 import { Checkbox } from '@/components/ui/checkbox'
 import { Dialog } from '@/components/ui/dialog'
@@ -28,7 +29,11 @@ export function InvitePerson({ clients, onClose, onDone }: Common) {
   function invite(event: FormEvent) {
     event.preventDefault()
     void sendWith(() =>
-      send<PersonRow>(peopleKey, 'POST', { ...draft, initials: draft.initials || proposed, id, email }),
+      keep(
+        () =>
+          send<PersonRow>(peopleKey, 'POST', { ...draft, initials: draft.initials || proposed, id, email }),
+        { what: 'invitation', text: email },
+      ),
     )
   }
 
@@ -80,12 +85,16 @@ export function ChangePerson({ person, isOwn, clients, onClose, onStale, onDone 
     event.preventDefault()
     void sendWith(
       () =>
-        send<PersonRow>(personKey(person.id), 'PATCH', {
-          ...draft,
-          isActive,
-          reason,
-          version: person.version,
-        }),
+        keep(
+          () =>
+            send<PersonRow>(personKey(person.id), 'PATCH', {
+              ...draft,
+              isActive,
+              reason,
+              version: person.version,
+            }),
+          { what: `change of ${person.name}`, text: reason },
+        ),
       onStale,
     )
   }

@@ -16,7 +16,7 @@ export type Who = { name: string; initials: string; email: string; roles: Role[]
 const themeWords: Record<Theme, string> = { system: 'As the device', light: 'Bright', dark: 'Dim' }
 
 const item =
-  'flex min-h-[44px] cursor-pointer select-none items-center gap-2.5 px-4 outline-none data-[highlighted]:bg-typed data-[highlighted]:shadow-[inset_3px_0_0_var(--ink)]'
+  'flex min-h-[var(--hit)] cursor-pointer select-none items-center gap-2.5 px-4 outline-none data-[highlighted]:bg-typed data-[highlighted]:shadow-[inset_3px_0_0_var(--ink)]'
 
 export function PersonMenu({ who }: { who: Who }) {
   const { theme, setTheme } = useTheme()
@@ -38,57 +38,53 @@ export function PersonMenu({ who }: { who: Who }) {
     <DropdownMenu.Root modal={false}>
       <DropdownMenu.Trigger
         data-screen-only
-        className="relative shrink-0 whitespace-nowrap after:absolute after:-inset-x-2 after:-inset-y-3 after:content-[''] hover:underline hover:underline-offset-4"
+        className="relative shrink-0 whitespace-nowrap after:absolute after:-inset-x-2 after:inset-y-[calc((1.4em-var(--hit))/2)] after:content-[''] hover:underline hover:underline-offset-4"
       >
         {who.initials}, {rolesInWords(who.roles)}
       </DropdownMenu.Trigger>
-      <DropdownMenu.Portal>
-        <DropdownMenu.Content
-          align="end"
-          sideOffset={12}
-          collisionPadding={8}
-          className="floats z-50 w-64 text-15"
-        >
-          <p className="border-b border-hair px-4 py-3">
-            <b className="block">{who.name}</b>
-            <span className="break-words text-soft">{who.email}</span>
-          </p>
-          <DropdownMenu.RadioGroup value={theme} onValueChange={(value) => setTheme(value as Theme)}>
-            <DropdownMenu.Label className="px-4 pt-2.5 text-13 text-soft">
-              Light of the page
-            </DropdownMenu.Label>
-            {themes.map((one) => (
-              <DropdownMenu.RadioItem
-                key={one}
-                value={one}
-                className={item}
-                onSelect={(event) => event.preventDefault()}
+      <DropdownMenu.Content
+        align="end"
+        sideOffset={12}
+        collisionPadding={8}
+        className="floats z-50 w-[17em] text-left text-[length:var(--control-type)] font-430"
+      >
+        <p className="border-b border-hair px-4 py-3">
+          <b className="block">{who.name}</b>
+          <span className="break-words text-soft">{who.email}</span>
+        </p>
+        <DropdownMenu.RadioGroup value={theme} onValueChange={(value) => setTheme(value as Theme)}>
+          <DropdownMenu.Label className="px-4 pt-2.5 text-13 text-soft">Light of the page</DropdownMenu.Label>
+          {themes.map((one) => (
+            <DropdownMenu.RadioItem
+              key={one}
+              value={one}
+              className={item}
+              onSelect={(event) => event.preventDefault()}
+            >
+              <span
+                aria-hidden
+                className="flex h-[18px] w-[18px] items-center justify-center rounded-full border-2 border-rule"
               >
-                <span
-                  aria-hidden
-                  className="flex h-[18px] w-[18px] items-center justify-center rounded-full border-2 border-rule"
-                >
-                  <DropdownMenu.ItemIndicator className="h-2 w-2 rounded-full bg-ink" />
-                </span>
-                {themeWords[one]}
-              </DropdownMenu.RadioItem>
-            ))}
-          </DropdownMenu.RadioGroup>
-          <DropdownMenu.Item asChild className={`${item} border-t border-hair`}>
-            <Link href="/profile">Your profile</Link>
-          </DropdownMenu.Item>
-          <DropdownMenu.Item
-            className={item}
-            disabled={isLeaving}
-            onSelect={(event) => {
-              event.preventDefault()
-              void signOut()
-            }}
-          >
-            {isLeaving ? 'Signing out' : 'Sign out'}
-          </DropdownMenu.Item>
-        </DropdownMenu.Content>
-      </DropdownMenu.Portal>
+                <DropdownMenu.ItemIndicator className="h-2 w-2 rounded-full bg-ink" />
+              </span>
+              {themeWords[one]}
+            </DropdownMenu.RadioItem>
+          ))}
+        </DropdownMenu.RadioGroup>
+        <DropdownMenu.Item asChild className={`${item} border-t border-hair`}>
+          <Link href="/profile">Your profile</Link>
+        </DropdownMenu.Item>
+        <DropdownMenu.Item
+          className={item}
+          disabled={isLeaving}
+          onSelect={(event) => {
+            event.preventDefault()
+            void signOut()
+          }}
+        >
+          {isLeaving ? 'Signing out' : 'Sign out'}
+        </DropdownMenu.Item>
+      </DropdownMenu.Content>
     </DropdownMenu.Root>
   )
 }

@@ -4,6 +4,7 @@ import Link from 'next/link'
 import { usePathname } from 'next/navigation'
 import type { ReactNode } from 'react'
 import { Logo } from '@/components/marks/logo'
+import { SignedOutDialog } from '@/components/session/signed-out-dialog'
 import { Navigation } from './navigation'
 import { PersonMenu, type Who } from './person-menu'
 import type { Place } from './places'
@@ -17,8 +18,12 @@ type Props = { who: Who; places: Place[]; labName: string; day: string; isDemo: 
 export function Shell(props: Props) {
   const path = usePathname()
   const isBench = path === '/bench' || path.startsWith('/bench/')
-  if (isBench) return <BenchShell {...props} isWhole={path !== '/bench'} />
-  return <DeskShell {...props} path={path} />
+  return (
+    <>
+      {isBench ? <BenchShell {...props} isWhole={path !== '/bench'} /> : <DeskShell {...props} path={path} />}
+      <SignedOutDialog who={props.who} density={isBench ? 'bench' : 'desk'} />
+    </>
+  )
 }
 
 function DeskShell({ who, places, labName, day, isDemo, path, children }: Props & { path: string }) {
@@ -83,18 +88,18 @@ function BenchShell({ who, places, isWhole, children }: Props & { isWhole: boole
             aria-label="Stillstand, Bench"
           >
             <Logo />
-            <span className="pb-4 text-19 font-720">Bench</span>
+            <span className="pb-[5px] text-19 font-720">Bench</span>
           </Link>
           <span className="flex h-16 items-end gap-6">
             {desk ? (
               <Link
                 href={desk.href}
-                className="flex h-16 items-end pb-4 text-17 underline underline-offset-4"
+                className="flex h-16 items-end pb-1.5 text-17 underline underline-offset-4"
               >
                 Desk
               </Link>
             ) : null}
-            <span className="pb-4 text-17">
+            <span className="pb-1.5 text-17">
               <PersonMenu who={who} />
             </span>
           </span>
