@@ -20,7 +20,9 @@ export function curveInputs(page: CurvesPage, batchId: string): CurveInput[] {
     return [
       {
         title: known.label,
-        unit: [isThousand ? 'thousand mPa·s' : known.unit, ...split(method)].filter(Boolean),
+        unit: [isThousand ? 'thousand mPa·s' : (units[attribute] ?? known.unit), ...split(method)].filter(
+          Boolean,
+        ),
         decimals: attribute === 'ph' ? 2 : attribute === 'viscosity' ? 0 : 1,
         band: bandOf(first.finding, attribute, scale),
         series: page.stations.toReversed().flatMap((station) => {
@@ -62,7 +64,7 @@ function seriesOf(
       text: shownWithUnit(attribute, point.mean),
       doubt: point.counted ? null : (point.doubt ?? 'takes no part in the trend'),
     })),
-    trend: trendOf(series, attribute, scale),
+    trend: trendOf(series, station, attribute, scale),
     leaves:
       series.standing === 'leaning' && finding.leavesAt !== null
         ? { weeks: finding.leavesAt, low: finding.leavesAtLow, high: finding.leavesAtHigh }
@@ -70,16 +72,33 @@ function seriesOf(
   }
 }
 
-/** Separation that is out follows no straight line any more. */
-function trendOf(series: Series, attribute: AttributeKey, scale: number): TrendPoint[] | null {
-  if (series.line.length === 0 || series.standing === 'untold') return null
-  if (attribute === 'separation' && series.standing === 'out') return null
-  return series.line.map(({ time, mean, low, high }) => ({
-    weeks: time,
-    mean: mean / scale,
-    low: low / scale,
-    high: high / scale,
-  }))
+/**
+ * The line of a series as far as its own station is pulled. Only a trend that leans shows how sure it is: the
+ * bands of all the steady ones would cover everything. Separation that is out follows no straight line any more.
+ */
+function trendOf(
+  { line, standing }: Series,
+  station: CurvesPage['stations'][number],
+  attribute: AttributeKey,
+  scale: number,
+): TrendPoint[] | null {
+  if (line.length === 0 || standing === 'untold') return null
+  if (attribute === 'separation' && standing !== 'leaning') return null
+  const until = Math.max(...station.timePoints)
+  const isLeaning = standing === 'leaning'
+  return line
+    .filter(({ time }) => isLeaning || time <= until)
+    .map(({ time, mean, low, high }) => ({
+      weeks: time,
+      mean: mean / scale,
+      low: (isLeaning ? low : mean) / scale,
+      high: (isLeaning ? high : mean) / scale,
+    }))
+}
+
+const units: Partial<Record<AttributeKey, string>> = {
+  separation: 'percent of fill height',
+  mass: 'percent',
 }
 
 function bandOf({ band, initial }: SeriesFinding, attribute: string, scale: number) {

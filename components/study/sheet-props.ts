@@ -8,7 +8,10 @@ import { shownValue } from '@/lib/study/rules/words'
 /** One batch's shelves as the chart draws them. */
 export function sheetProps(sheet: SheetPage, batchId: string): SheetProps {
   const shelves = sheet.shelves.find((one) => one.batchId === batchId)?.rows ?? []
-  const flags = sheet.flags.filter((flag) => flag.batchId === batchId)
+  // What is out stands first; the rest as it was raised.
+  const flags = sheet.flags
+    .filter((flag) => flag.batchId === batchId)
+    .toSorted((a, b) => Number(b.level === 'out') - Number(a.level === 'out') || a.number - b.number)
   return {
     startOn: sheet.study.startedOn,
     endWeeks: sheet.study.endWeeks,

@@ -194,6 +194,7 @@ function StandingCell({ row }: { row: LedgerRow }) {
 }
 
 function standingNote({ standing, worst, timePoints, startedOn }: LedgerRow): string {
+  if (worst?.isPending) return `${inSentence(worst.attribute)}, to be confirmed`
   if (standing === 'untold' || !worst) {
     return timePoints > 1 ? counted(timePoints, 'time point') : 'nothing read yet'
   }

@@ -17,7 +17,7 @@ export async function listStudies(db: Db, actor: Actor, filter: StudyFilter) {
   const parts = await listShelfParts(db, ids)
   const rows = found.map((study): LedgerRow => {
     const own = parts.of(study.id)
-    const shelf = worstShelf(own.series, own.stations)
+    const shelf = worstShelf(own.series, own.stations, own.flags)
     const next = nextOne(study, own)
     return {
       id: study.id,
@@ -37,6 +37,7 @@ export async function listStudies(db: Db, actor: Actor, filter: StudyFilter) {
             used: shelf.series.used,
             latest: shelf.series.latestValue,
             leavesAtWeeks: shelf.series.leavesAtWeeks,
+            isPending: shelf.isPending,
           }
         : null,
       startedOn: study.startedOn,

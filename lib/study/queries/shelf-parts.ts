@@ -55,11 +55,9 @@ export async function listShelfParts(db: Db, studyIds: string[]) {
     .execute()
   const flags = await db
     .selectFrom('flag')
-    .select('studyId')
-    .select((eb) => eb.fn.countAll<number>().as('open'))
+    .select(['studyId', 'studyStationId', 'batchId', 'attribute', 'rule'])
     .where('state', '=', 'open')
     .where(isOfThem)
-    .groupBy('studyId')
     .execute()
   const cases = await db
     .selectFrom('shelfCase')
@@ -83,7 +81,7 @@ export async function listShelfParts(db: Db, studyIds: string[]) {
       series: by.series.get(studyId) ?? [],
       pullJars: by.pullJars.get(studyId) ?? [],
       readings: (by.readings.get(studyId) ?? []).map((reading) => ({ ...reading, readBy: '' })),
-      openFlags: by.flags.get(studyId)?.[0]?.open ?? 0,
+      flags: by.flags.get(studyId) ?? [],
       caseToSign: by.cases.get(studyId)?.[0]?.code ?? null,
     }),
   }

@@ -103,7 +103,7 @@ function where(
       : station?.kind === 'transport'
         ? ['on the ', 'road']
         : ['at ', degrees(station?.temperatureC ?? null)]
-  const batch = batches.length > 1 ? [{ text: `, ${one.batchCode},`, isStrong: false }] : []
+  const batch = batches.length > 1 ? [{ text: ` in ${one.batchCode}`, isStrong: false }] : []
   return [
     { text: isFirst ? capital(before) : before, isStrong: false },
     { text: name, isStrong: true },

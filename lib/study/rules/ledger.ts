@@ -22,6 +22,8 @@ export type LedgerRow = {
     used: number | null
     latest: number | null
     leavesAtWeeks: number | null
+    /** Read beyond its band, or separation has begun, and nobody has settled it yet. */
+    isPending: boolean
   } | null
   station: {
     kind: string
@@ -57,17 +59,34 @@ type Station = { id: string; kind: string; temperatureC: number | null }
 
 const ranks: Standing[] = ['untold', 'steady', 'leaning', 'out']
 
-/** The shelf to look at first: the worst standing, then the most of its band used, else the hottest one. */
-export function worstShelf(series: Series[], stations: Station[]) {
+type Pending = { studyStationId: string | null; batchId: string; attribute: string; rule: string }
+
+/**
+ * The shelf to look at first: the worst standing, then what was read beyond its band and waits for its repeat,
+ * then the most of its band used; else the hottest one.
+ */
+export function worstShelf(series: Series[], stations: Station[], flags: Pending[]) {
+  const isPending = (one: Series) =>
+    flags.some(
+      (flag) =>
+        (flag.rule === 'out' || flag.rule === 'onset') &&
+        flag.studyStationId === one.studyStationId &&
+        flag.batchId === one.batchId &&
+        flag.attribute === one.attribute,
+    )
   const worst = series.toSorted(
-    (a, b) => ranks.indexOf(b.standing) - ranks.indexOf(a.standing) || (b.used ?? 0) - (a.used ?? 0),
+    (a, b) =>
+      ranks.indexOf(b.standing) - ranks.indexOf(a.standing) ||
+      Number(isPending(b)) - Number(isPending(a)) ||
+      (b.used ?? 0) - (a.used ?? 0),
   )[0]
   const hottest = stations.toSorted((a, b) => (b.temperatureC ?? -1000) - (a.temperatureC ?? -1000))[0]
-  const isTold = worst !== undefined && worst.standing !== 'untold'
+  const isTold = worst !== undefined && (worst.standing !== 'untold' || isPending(worst))
   return {
     standing: worstOf(series.map((one) => one.standing)),
     series: isTold ? worst : null,
     station: (isTold ? stations.find((one) => one.id === worst.studyStationId) : hottest) ?? null,
+    isPending: isTold && worst.standing !== 'out' && isPending(worst),
   }
 }
 
@@ -76,7 +95,7 @@ export function nextOne(
   study: { today: string; startedBy: string; state: string },
   own: {
     pullJars: { dueOn: string; windowTo: string; state: string }[]
-    openFlags: number
+    flags: Pending[]
     caseToSign: string | null
   },
 ) {
@@ -99,20 +118,19 @@ export function nextOne(
     nextPullOn: waiting ?? null,
     isToday,
     jarsNext,
-    flags: own.openFlags,
-    whoIsNext: whoIsNext(study, own, waiting !== undefined),
+    flags: own.flags.length,
+    whoIsNext: whoIsNext(study, own.flags.length, own.caseToSign, waiting !== undefined),
   }
 }
 
 function whoIsNext(
   study: { startedBy: string; state: string },
-  own: { openFlags: number; caseToSign: string | null },
+  flags: number,
+  caseToSign: string | null,
   hasPulls: boolean,
 ): string {
-  if (own.openFlags > 0) {
-    return `${study.startedBy}, ${own.openFlags} ${own.openFlags === 1 ? 'flag' : 'flags'}`
-  }
-  if (own.caseToSign) return `QA signs ${own.caseToSign}`
+  if (flags > 0) return `${study.startedBy}, ${flags} ${flags === 1 ? 'flag' : 'flags'}`
+  if (caseToSign) return `QA signs ${caseToSign}`
   if (study.state === 'closed') return 'nobody'
   return hasPulls ? 'Bench pulls' : `${study.startedBy} ends it`
 }
@@ -124,7 +142,9 @@ export function sorted(rows: LedgerRow[], sort: (typeof studySorts)[number]): Le
   }
   return rows.toSorted(
     (a, b) =>
-      ranks.indexOf(b.standing) - ranks.indexOf(a.standing) || (b.worst?.used ?? 0) - (a.worst?.used ?? 0),
+      ranks.indexOf(b.standing) - ranks.indexOf(a.standing) ||
+      Number(b.worst?.isPending ?? false) - Number(a.worst?.isPending ?? false) ||
+      (b.worst?.used ?? 0) - (a.worst?.used ?? 0),
   )
 }
 
