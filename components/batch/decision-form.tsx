@@ -39,7 +39,7 @@ export function DecisionForm({ batch, onSaved }: Props) {
           }
         />
         <ErrorNote error={refusal} />
-        <div className="flex flex-wrap gap-[var(--control-gap)]">
+        <div className="flex flex-wrap items-start gap-[var(--control-gap)]">
           <Button kind="primary" busy={isSending} why={why} onClick={() => decide('released')}>
             Release {batch.code}
           </Button>

@@ -38,6 +38,8 @@ export function WeighPanel(props: Props) {
   const [bar, barWidth] = useWidth<HTMLDivElement>(420)
   const actualG = readDecimal(weight)
   const verdict = actualG === null || actualG <= 0 ? null : weighed(line.targetG, actualG)
+  // Still pouring: hollow. Only what is too much is out.
+  const isShort = verdict !== null && !verdict.isWithin && verdict.differenceG < 0
   const isUnreadable = weight.trim() !== '' && actualG === null
   const tolerance = toleranceGrams(line.targetG)
   const isCorrection = line.actualG !== null
@@ -118,7 +120,8 @@ export function WeighPanel(props: Props) {
             lower={line.targetG - tolerance}
             upper={line.targetG + tolerance}
             initial={line.targetG}
-            now={verdict ? actualG : null}
+            last={isShort ? actualG : null}
+            now={verdict && !isShort ? actualG : null}
             edgeFrom={2}
             title={`Allowed from ${gramsText(line.targetG - tolerance)} to ${gramsText(line.targetG + tolerance)} g`}
           />

@@ -22,14 +22,16 @@ export function filledFrom(line: TypedLine, ingredient: IngredientRow): Partial<
 export function linesFromPaste(
   pasted: readonly PastedLine[],
   known: readonly IngredientRow[],
-  phase: string,
+  /** The line that was pasted into: what the block does not say is as it is there. */
+  at: TypedLine | undefined,
   lines: readonly TypedLine[],
 ): TypedLine[] {
   const hasRemainder = lines.some((line) => line.isRemainder)
   const remainderAt = hasRemainder ? -1 : pasted.findIndex((line) => !line.percent)
   return pasted.map((one, index) => {
-    const own = one.phase || phase
-    const isInternal = one.isInternal ?? lines.find((line) => line.phase === own)?.isInternal ?? own === 'B'
+    const own = one.phase || at?.phase || 'A'
+    const isInternal =
+      one.isInternal ?? lines.find((line) => line.phase === own)?.isInternal ?? at?.isInternal ?? false
     const typed: TypedLine = {
       ...emptyLine(newId(), own, isInternal),
       ...{ inciName: one.inciName, function: one.function, percent: one.percent },

@@ -19,7 +19,7 @@ export function FormulaActs({ formula, handle, totals, onSave }: Props) {
       : undefined
   const draft = formula.versions.find((version) => version.state === 'draft')
   return (
-    <>
+    <div className="flex flex-wrap items-start gap-2">
       {formula.state === 'locked' && !draft ? (
         <NewVersion formula={formula} next={(formula.versions.at(-1)?.number ?? 0) + 1} />
       ) : null}
@@ -29,6 +29,6 @@ export function FormulaActs({ formula, handle, totals, onSave }: Props) {
           Save the draft
         </Button>
       ) : null}
-    </>
+    </div>
   )
 }

@@ -45,7 +45,7 @@ export function InsideDrawing({ totals, before, checks, emulsionType }: Props) {
           phi={volume / 100}
           inside={innerWord(emulsionType)}
           dropMicrometres={null}
-          height={Math.max(494, pointing.length * 118)}
+          height={Math.max(494, pointing.length * 126)}
           note={`By mass it is ${mass.toFixed(1)} %. The size of the drops has not been measured.`}
           questions={pointing.map((check) => ({
             id: check.key,

@@ -52,7 +52,7 @@ export function LineRow({ line, errors, remainder, was, onChange, onPick, onAdd,
         />
       </td>
       <td className="whitespace-nowrap py-0.5 text-right align-middle text-13">
-        {line.isRemainder ? <span className="mr-1.5">q.s.</span> : null}
+        {line.isRemainder ? <span className="block leading-none">q.s.</span> : null}
         {was ? (
           <span title={`${was} in the version before`}>
             <svg viewBox="0 0 10 10" width="10" height="10" aria-hidden className="mr-1 inline">

@@ -52,7 +52,7 @@ export function LineSheet({
 
   function addLine(phase: string, after?: string) {
     const own = lines.filter((line) => line.phase === phase)
-    const isInternal = own[0]?.isInternal ?? phase === 'B'
+    const isInternal = (own[0] ?? lines.at(-1))?.isInternal ?? false
     const line = emptyLine(newId(), phase, isInternal)
     const index = lines.findIndex((other) => other.id === (after ?? own.at(-1)?.id))
     onLines(
@@ -94,7 +94,7 @@ export function LineSheet({
     const at = lines.find((line) => line.id === row)
     const query = new URLSearchParams(pasted.map((line) => ['name', line.inciName]))
     const known = await fetcher<IngredientRow[]>(`/api/ingredients/known?${query}`).catch(() => [])
-    const added = linesFromPaste(pasted, known, at?.phase ?? 'A', lines)
+    const added = linesFromPaste(pasted, known, at, lines)
     const index = at ? lines.indexOf(at) + 1 : lines.length
     const kept = [...lines.slice(0, index), ...added, ...lines.slice(index)].filter(
       (line) => !isBlankLine(line) || line.isRemainder,
@@ -209,7 +209,7 @@ export function LineSheet({
 }
 
 /** After the INCI name: function, was, % w/w, g/mL, per kg, in, acts. */
-const columnWidths = [112, 52, 66, 54, 56, 30, 74]
+const columnWidths = [110, 58, 64, 54, 56, 30, 74]
 
 function wasShare(line: TypedLine, remainder: number, before: Map<string, string> | null): string | null {
   if (!before || !line.inciName.trim()) return null
