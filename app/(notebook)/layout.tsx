@@ -12,10 +12,11 @@ export default async function NotebookLayout({ children }: { children: ReactNode
   const { actor, db, now } = await page(permission)
   const lab = await getLab(db)
   const { name, initials, email, roles } = actor
+  const demoPersonId = actor.isDemo ? actor.personId : null
   const isDemo = env().demo && lab.demoFilledAt !== null
   return (
     <Shell
-      who={{ name, initials, email, roles }}
+      who={{ name, initials, email, roles, demoPersonId }}
       places={placesOf({ actor, hasMailFake: env().smtpUrl === null && lab.demoFilledAt !== null })}
       labName={lab.name}
       day={dayWithName(now, lab.timeZone)}

@@ -8,7 +8,7 @@ import { ClientError, send } from '@/lib/http/fetcher'
 import { listenToWaiting, waitingNow, type Waiting } from './keep'
 import { PasswordField } from './password-field'
 
-type Props = { who: { email: string; initials: string }; density?: Density }
+type Props = { who: { email: string; initials: string; demoPersonId: string | null }; density?: Density }
 
 /** Stands once in the shell and opens for whatever `keep` could not send. */
 export function SignedOutDialog(props: Props) {
@@ -28,7 +28,11 @@ function AskPassword({ who, density, waiting }: Props & { waiting: Waiting }) {
     setSending(true)
     setError(null)
     try {
-      await send('/api/session', 'POST', { email: who.email, password })
+      await send(
+        '/api/session',
+        'POST',
+        who.demoPersonId ? { demoPersonId: who.demoPersonId } : { email: who.email, password },
+      )
       await waiting.signedIn()
     } catch (thrown) {
       setError(thrown)
@@ -56,16 +60,20 @@ function AskPassword({ who, density, waiting }: Props & { waiting: Waiting }) {
             {length > 0 ? `, ${length} ${length === 1 ? 'character' : 'characters'}` : ''}, not sent
           </p>
         </div>
-        <input type="hidden" name="username" autoComplete="username" value={who.email} readOnly />
-        <PasswordField
-          label={`Password of ${who.initials}`}
-          name="password"
-          autoComplete="current-password"
-          autoFocus
-          value={password}
-          onText={setPassword}
-          error={error instanceof ClientError ? error.fields['password'] : undefined}
-        />
+        {who.demoPersonId ? null : (
+          <>
+            <input type="hidden" name="username" autoComplete="username" value={who.email} readOnly />
+            <PasswordField
+              label={`Password of ${who.initials}`}
+              name="password"
+              autoComplete="current-password"
+              autoFocus
+              value={password}
+              onText={setPassword}
+              error={error instanceof ClientError ? error.fields['password'] : undefined}
+            />
+          </>
+        )}
         <ErrorNote error={error} />
         <div className="flex flex-wrap gap-[var(--control-gap)]">
           <Button type="submit" kind="primary" busy={isSending} className="flex-1">

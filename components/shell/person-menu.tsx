@@ -11,7 +11,14 @@ import { rolesInWords } from './role-words'
 import { themes, type Theme } from './theme'
 import { useTheme } from './use-theme'
 
-export type Who = { name: string; initials: string; email: string; roles: Role[] }
+export type Who = {
+  name: string
+  initials: string
+  email: string
+  roles: Role[]
+  /** Came in by one press and has no password. */
+  demoPersonId: string | null
+}
 
 const themeWords: Record<Theme, string> = { system: 'As the device', light: 'Bright', dark: 'Dim' }
 
@@ -53,7 +60,9 @@ export function PersonMenu({ who }: { who: Who }) {
           <span className="break-words text-soft">{who.email}</span>
         </p>
         <DropdownMenu.RadioGroup value={theme} onValueChange={(value) => setTheme(value as Theme)}>
-          <DropdownMenu.Label className="px-4 pt-2.5 text-13 text-soft">Light of the page</DropdownMenu.Label>
+          <DropdownMenu.Label className="px-4 pt-2.5 text-[length:var(--note-type)] text-soft">
+            Light of the page
+          </DropdownMenu.Label>
           {themes.map((one) => (
             <DropdownMenu.RadioItem
               key={one}
