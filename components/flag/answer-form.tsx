@@ -141,7 +141,7 @@ function settlingWords(choice: Settling, flag: FlagPage) {
       }
     case 'answer':
       return flag.level === 'doubt'
-        ? { label: 'Keep the doubt, answer it', hint: 'waits for a repeat' }
+        ? { label: 'Keep the doubt', hint: 'a repeat decides' }
         : { label: 'Answer it', hint: 'the reading stays' }
   }
 }

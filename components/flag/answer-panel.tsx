@@ -51,7 +51,6 @@ export function AnswerPanel({ flag, rights, onChanged }: Props) {
             {flag.readOn ? `, ${spokenDay(flag.readOn, false)}` : ''}: “{flag.pullNote}”
           </p>
         ) : null}
-        {flag.caution && isOpen ? <p className="mt-1 text-13 text-soft">{flag.caution}</p> : null}
       </div>
       {isOpen ? null : <Answered flag={flag} />}
       {hasForm ? <AnswerForm flag={flag} rights={rights} onDone={done} onStale={stale} /> : null}

@@ -1,4 +1,5 @@
 import type { FlagPage } from '@/lib/flag/queries/one'
+import { namedJar } from '@/lib/jar/rules'
 import { flagKeys, type FlagCause } from '@/lib/flag/schema'
 
 /** What becomes of it: an answer, or the doubt or the reading itself set aside. */
@@ -35,7 +36,7 @@ export function usualActs(flag: FlagPage): { text: string; hint?: string }[] {
     ...(spare
       ? [
           {
-            text: `Repeat on spare jar ${spare.code}`,
+            text: `Repeat on spare jar ${namedJar(spare.code, { temperatureC: flag.temperatureC, isFreezeThaw: flag.isFreezeThaw ?? false })}`,
             hint: `shelf ${spare.shelf}, place ${spare.place}; ${flag.spares.length === 1 ? 'the last one' : `${flag.spares.length} left`} there`,
           },
         ]

@@ -17,7 +17,10 @@ export type FlagContext = {
 
 export function flagContext(flag: FlagPage, curves: CurvesPage, sheet: SheetPage): FlagContext {
   const all = curveInputs(curves, flag.batchId).find((one) => one.title === flag.label) ?? null
-  const own = all?.series.filter((one) => one.id === flag.studyStationId) ?? []
+  // The gap keeps the name that follows the reading clear of its ring.
+  const own = (all?.series ?? [])
+    .filter((one) => one.id === flag.studyStationId)
+    .map((one) => ({ ...one, label: `\u00a0${one.label}` }))
   const shelf =
     sheet.shelves
       .find((one) => one.batchId === flag.batchId)

@@ -46,7 +46,7 @@ export function flagHeadline(flag: FlagPage): Phrase[] {
 
 /** Under the headline: the number against its band, and what else moved. */
 export function flagSentence(flag: FlagPage): string {
-  const others = [jarsSentence(flag), instrumentSentence(flag)].filter(Boolean).join(', ')
+  const others = [jarsSentence(flag), instrumentSentence(flag)].filter(Boolean).join(', and ')
   return [valueSentence(flag), others ? `${capitalised(others)}.` : ''].filter(Boolean).join(' ')
 }
 
@@ -136,9 +136,9 @@ function leanSentence(flag: FlagPage): string {
   const { usedNow, leavesAtLow, leavesAtHigh, times } = flag.evidence
   const limits =
     typeof leavesAtLow === 'number' && typeof leavesAtHigh === 'number'
-      ? `, ${dayAt(flag, leavesAtLow)} to ${dayAt(flag, leavesAtHigh)} at 95 % confidence`
+      ? ` and leaves it between ${dayAt(flag, leavesAtLow)} and ${dayAt(flag, leavesAtHigh)}, at 95 % confidence`
       : typeof leavesAtLow === 'number'
-        ? `, at the earliest ${dayAt(flag, leavesAtLow)}`
+        ? `, and leaves it on ${dayAt(flag, leavesAtLow)} at the earliest`
         : ''
   return `Its trend through ${times} times has used ${share(usedNow)} of the band${limits}.`
 }
@@ -148,8 +148,8 @@ function jarsSentence(flag: FlagPage): string {
   if (others.length === 0) return ''
   const beyond = [...new Set(others.filter((row) => row.isBeyond).map((row) => inSentence(row.attribute)))]
   return beyond.length > 0
-    ? `${listed(beyond)} ${beyond.length === 1 ? 'is' : 'are'} beyond the band in the same pull`
-    : 'nothing else left its band in the same pull'
+    ? `${listed(beyond)} ${beyond.length === 1 ? 'is' : 'are'} beyond the band as well`
+    : 'nothing else in the pull left its band'
 }
 
 function instrumentSentence(flag: FlagPage): string {

@@ -17,7 +17,7 @@ import { fetcher } from '@/lib/http/fetcher'
 import { dayIn, spokenDay } from '@/lib/study/rules/calendar'
 import { capital, counted } from '@/lib/study/rules/words'
 import { flagsAddress, type ShownFlags } from './flag-filter'
-import { levelStanding, levelWord, stationText, whoIsNext } from './flag-words'
+import { levelStanding, levelWord, stationText, whoIsNext, whole } from './flag-words'
 import type { FlagRights } from './rights'
 
 type Props = { shown: ShownFlags; rights: FlagRights; timeZone: string }
@@ -133,10 +133,13 @@ function columns(rights: FlagRights, timeZone: string): LedgerColumn<FlagLine>[]
       cell: (flag) => (
         <Link
           href={`/flags/${flag.number}`}
-          className="line-clamp-3 underline-offset-4 hover:underline sm:line-clamp-2 lg:line-clamp-1"
+          className="block underline-offset-4 hover:underline lg:line-clamp-1"
           title={flag.sentence}
         >
-          {flag.state === 'closed' ? flag.sentence : <span className="font-600">{flag.sentence}</span>}
+          <span className={flag.state === 'closed' ? '' : 'font-600'}>{whole(flag.sentence)}</span>
+          <span className="block text-13 text-soft sm:hidden">
+            {flag.studyCode}, {levelWord(flag)}; {whoIsNext(flag, rights).text}
+          </span>
         </Link>
       ),
     },

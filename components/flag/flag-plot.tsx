@@ -2,7 +2,7 @@
 
 import { useState } from 'react'
 import type { CurveInput } from '@/components/charts/curve-data'
-import { colourRole, curveScale, markerOf } from '@/components/charts/curve-geometry'
+import { axisNumber, curveScale, markerOf, nearerEdge } from '@/components/charts/curve-geometry'
 import { CurvePlot } from '@/components/charts/curve-plot'
 import { CurveTable } from '@/components/charts/curve-table'
 import { halo } from '@/components/charts/halo'
@@ -31,7 +31,11 @@ export function FlagPlot({ input, startOn, endWeeks, todayWeeks, ring, caption, 
   const [box, width] = useWidth<HTMLDivElement>(520)
   const [isTable, setIsTable] = useState(false)
   const left = 56
-  const scale = timeScale(left + 20, width - 16, endWeeks)
+  // Today's tag keeps within the plot's width.
+  const isLate = todayWeeks !== null && todayWeeks <= endWeeks && todayWeeks > endWeeks * 0.85
+  const scale = timeScale(left + 20, width - (isLate ? 48 : 16), endWeeks)
+  // A wider plot writes its band and its notes itself.
+  const isNarrow = width - left < 560
   const points = [...new Set(input.series.flatMap((one) => one.points.map((point) => point.weeks)))].sort(
     (a, b) => a - b,
   )
@@ -53,15 +57,23 @@ export function FlagPlot({ input, startOn, endWeeks, todayWeeks, ring, caption, 
           time={time}
           frame={{ width, height, left, zero: scale.zero, end: scale.end }}
         />
-        {ring ? <Ring input={input} ring={ring} width={width} left={left} x={scale.x(ring.weeks)} /> : null}
+        <svg
+          width={width}
+          height={height}
+          overflow="visible"
+          className="pointer-events-none absolute inset-0"
+          aria-hidden
+        >
+          {isNarrow ? <BandWords input={input} left={left} /> : null}
+          {ring ? <Ring input={input} ring={ring} width={width} left={left} x={scale.x(ring.weeks)} /> : null}
+        </svg>
       </div>
       <p className={`text-15 ${hasTag ? 'pt-9' : 'pt-2'}`}>
         <b>{input.title}</b>
         {caption}
       </p>
-      {input.band ? <p className="text-15 font-600 text-alarm">{input.band.text}</p> : null}
       {trend ? <p className="text-15">{trend}</p> : null}
-      {input.notes?.map((note) => (
+      {(isNarrow ? input.notes : [])?.map((note) => (
         <p key={note.weeks} className="text-14 text-soft">
           {note.text}
         </p>
@@ -80,7 +92,31 @@ export function FlagPlot({ input, startOn, endWeeks, todayWeeks, ring, caption, 
   )
 }
 
-/** The reading in question: solid, ringed in ink, named at the end of a line that keeps clear of its trend. */
+/** What the band allows, in the wash beyond the edge that the series moves to. */
+function BandWords({ input: { band, series, decimals }, left }: { input: CurveInput; left: number }) {
+  const [first] = series
+  const edge = first ? nearerEdge(first, band?.lower, band?.upper) : null
+  if (!band || edge === null) return null
+  const isLower = edge === band.lower
+  const y = height * (1 - curveScale(series, band).share(edge))
+  const isOneSided = typeof band.lower !== 'number' || typeof band.upper !== 'number'
+  return (
+    <text
+      x={left + 8}
+      y={isLower ? Math.min(y + 19, height - 6) : Math.max(y - 8, 16)}
+      fontSize={14}
+      fontWeight={600}
+      style={{ fill: 'var(--alarm)', ...halo('var(--wash)') }}
+    >
+      {isOneSided ? band.text : `allowed ${isLower ? 'down' : 'up'} to ${axisNumber(edge, decimals || 1)}`}
+    </text>
+  )
+}
+
+/**
+ * The reading in question: solid, ringed in ink, named at the end of a line. A series comes from the left and
+ * goes on the way it went, so what lies against its direction to the right is free.
+ */
 function Ring({
   input,
   ring,
@@ -94,23 +130,16 @@ function Ring({
   left: number
   x: number
 }) {
-  const y = height * (1 - curveScale(input.series, input.band).share(ring.value))
-  const series = input.series[0]
+  const scale = curveScale(input.series, input.band)
+  const y = height * (1 - scale.share(ring.value))
+  const [series] = input.series
   if (!series) return null
-  const role = colourRole(series)
-  const isLow = y > height * 0.4
-  const reach = isLow ? -70 : 70
-  const textY = y + reach + (isLow ? -6 : 17)
-  const half = ring.text.length * 4.6
-  const textX = Math.min(Math.max(x, left + half + 8), width - half - 8)
+  const isRising = ring.value > (series.points[0]?.value ?? ring.value)
+  const reach = isRising ? (y + 90 < height ? 64 : -64) : y > 90 ? -64 : 64
+  const length = ring.text.length * 9
+  const textX = Math.max(left + 8, Math.min(x - 14, width - length - 8))
   return (
-    <svg
-      width={width}
-      height={height}
-      overflow="visible"
-      className="pointer-events-none absolute inset-0"
-      aria-hidden
-    >
+    <g>
       <path d={`M${x} ${y + Math.sign(reach) * 16}V${y + reach}`} stroke="var(--ink)" strokeWidth={1.25} />
       <Drawn
         shapes={stationMarkerShapes(markerOf(series, 0), { x, y, size: 13, stroke: 'alarm', fill: 'alarm' })}
@@ -118,14 +147,13 @@ function Ring({
       <circle cx={x} cy={y} r={15} fill="none" stroke="var(--ink)" strokeWidth={2.5} />
       <text
         x={textX}
-        y={textY}
+        y={y + reach + (reach < 0 ? -6 : 17)}
         fontSize={17}
         fontWeight={700}
-        textAnchor="middle"
-        style={{ fill: role === 'soft' ? 'var(--ink)' : `var(--${role})`, ...halo('var(--paper)') }}
+        style={{ fill: 'var(--alarm)', ...halo('var(--paper)') }}
       >
         {ring.text}
       </text>
-    </svg>
+    </g>
   )
 }

@@ -17,7 +17,7 @@ import type { FlagContext } from './flag-context'
 import { flagHeadline, flagSentence } from './flag-headline'
 import { FlagPlot } from './flag-plot'
 import { FlagShelf } from './flag-shelf'
-import { flaggedValue } from './flag-words'
+import { flaggedValue, whole } from './flag-words'
 import { howRaised, raisedSentence } from './how-raised'
 import { Moved } from './moved'
 import { NextFlag } from './next-flag'
@@ -43,7 +43,7 @@ export function FlagView({ number, context, rights }: Props) {
         <Heading
           crumb={<Crumb flag={flag} raisedOn={raisedOn} />}
           headline={<Phrases phrases={flagHeadline(flag)} />}
-          sentence={flagSentence(flag)}
+          sentence={whole(flagSentence(flag))}
         />
         <div className="mt-2 xl:absolute xl:right-0 xl:top-2 xl:mt-0">
           <NextFlag flag={flag} />
@@ -58,7 +58,7 @@ export function FlagView({ number, context, rights }: Props) {
               endWeeks={context.endWeeks}
               todayWeeks={context.todayWeeks}
               ring={context.ring && { ...context.ring, text: ringText(flag) }}
-              caption={caption(flag)}
+              caption={whole(caption(flag, context.plot.unit[0] ?? ''))}
               trend={trendText(flag)}
             />
           ) : null}
@@ -69,7 +69,7 @@ export function FlagView({ number, context, rights }: Props) {
                 flag.attribute === 'look' || flag.attribute === 'odour' ? flag.attribute : 'separation'
               }
               detectionPercent={context.detectionPercent}
-              allowed={allowedOf(flag)}
+              allowed={whole(allowedOf(flag) ?? '')}
             />
           ) : null}
           <section aria-labelledby="how">
@@ -77,7 +77,7 @@ export function FlagView({ number, context, rights }: Props) {
               How this flag was raised
             </h2>
             <p className="max-w-[62ch] text-15">
-              Rule: {how.rule} {how.numbers} {raisedSentence(flag, raisedOn)}
+              {whole(`Rule: ${how.rule} ${how.numbers} ${raisedSentence(flag, raisedOn)}`)}
             </p>
           </section>
         </div>
@@ -128,10 +128,10 @@ function ringText(flag: FlagPage): string {
   return [text, flag.readOn ? `on ${spokenDay(flag.readOn, false)}` : ''].filter(Boolean).join(' ')
 }
 
-function caption(flag: FlagPage): string {
+function caption(flag: FlagPage, unit: string): string {
   const initial = flag.series?.finding.initial
   return [
-    flag.unit ? `, ${flag.unit}` : '',
+    unit && unit !== flag.method ? `, ${unit}` : '',
     flag.method ? `, ${flag.method}` : '',
     initial === undefined ? '.' : `. Initial ${shownWithUnit(flag.attribute, initial)}.`,
   ].join('')

@@ -90,3 +90,8 @@ export function isDownwards(flag: FlagPage): boolean {
   const initial = flag.series?.finding.initial
   return value !== null && initial !== undefined && value < initial
 }
+
+/** A number is not parted from its unit at the end of a line. */
+export function whole(text: string): string {
+  return text.replace(/(\d) (%|°C|mPa·s|micrometres|rpm|days?|times)/g, '$1\u00a0$2')
+}

@@ -4,17 +4,19 @@ type Props = {
   scatter: number | null
   reach: number
   isFlagged: boolean
+  isBeyond: boolean
 }
 
-export const barWidth = 214
+export const barWidth = 200
 
 /** A reading against its own trend: box twice its scatter, tick where the trend leads, dot where it was read. */
-export function MovedBar({ difference, scatter, reach, isFlagged }: Props) {
+export function MovedBar({ difference, scatter, reach, isFlagged, isBeyond }: Props) {
   const x = (percent: number) => barWidth / 2 + (percent / reach) * (barWidth / 2 - 8)
   const box = Math.min(reach, 2 * (scatter ?? 0))
   const isOff = Math.abs(difference) > reach
   const at = isOff ? x(Math.sign(difference) * reach) : x(difference)
   const way = Math.sign(difference)
+  const colour = isBeyond ? 'var(--alarm)' : 'var(--ink)'
   return (
     <svg
       viewBox={`0 0 ${barWidth} 24`}
@@ -37,9 +39,9 @@ export function MovedBar({ difference, scatter, reach, isFlagged }: Props) {
       ) : null}
       <path d={`M${x(0)} 4v16`} stroke="var(--ink)" strokeWidth={1.25} />
       {isOff ? (
-        <path d={`M${at + way * 8} 12L${at - way} 6.5V17.5Z`} fill="var(--ink)" stroke="var(--ground)" />
+        <path d={`M${at + way * 8} 12L${at - way} 6.5V17.5Z`} fill={colour} stroke="var(--ground)" />
       ) : (
-        <circle cx={at} cy={12} r={5.5} fill="var(--ink)" stroke="var(--ground)" />
+        <circle cx={at} cy={12} r={5.5} fill={colour} stroke="var(--ground)" />
       )}
       {isFlagged ? <circle cx={at} cy={12} r={9.5} fill="none" stroke="var(--ink)" strokeWidth={2} /> : null}
     </svg>

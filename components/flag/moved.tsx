@@ -3,8 +3,8 @@ import type { FlagPage } from '@/lib/flag/queries/one'
 import type { AgainstTrend } from '@/lib/flag/rules/against-trend'
 import { spokenDay } from '@/lib/study/rules/calendar'
 import { attributeName } from '@/lib/study/rules/finding'
-import { shownValue, shownWithUnit } from '@/lib/study/rules/words'
-import { instrumentNoun, stationText } from './flag-words'
+import { capital, shownValue, shownWithUnit } from '@/lib/study/rules/words'
+import { instrumentNoun, stationText, whole } from './flag-words'
 import { comparedOthers, instrumentVerdict } from './instrument-verdict'
 import { MovedAxis, MovedBar } from './moved-bar'
 
@@ -23,7 +23,7 @@ export function Moved({ flag, stationMeanC }: { flag: FlagPage; stationMeanC: nu
         <p className="text-14 text-soft">each against its own trend, in % of the initial</p>
       </div>
       {flag.sameInstrument.length > 0 ? (
-        <Group title={`${flag.instrumentName} ${flag.instrumentCode}, the same day`}>
+        <Group title={`${capital(flag.instrumentName ?? '')}, ${flag.instrumentCode}, the same day`}>
           {flag.sameInstrument.map((row) => (
             <Row
               key={row.readingIds[0]}
@@ -37,7 +37,13 @@ export function Moved({ flag, stationMeanC }: { flag: FlagPage; stationMeanC: nu
       {jars.length > 0 ? (
         <Group title={`The jars of this pull${flag.jarName ? `, ${flag.jarName} among them` : ''}`}>
           {jars.map((row) => (
-            <Row key={row.readingIds[0]} row={row} reach={reach} name={attributeName(row.attribute)} />
+            <Row
+              key={row.readingIds[0]}
+              row={row}
+              reach={reach}
+              name={jarRowName(row, jars)}
+              isBar={row.differencePercent !== null && !row.isBeyond}
+            />
           ))}
         </Group>
       ) : null}
@@ -47,7 +53,8 @@ export function Moved({ flag, stationMeanC }: { flag: FlagPage; stationMeanC: nu
       </div>
       {stationMeanC === null ? null : (
         <p className="mt-1 text-15">
-          {flag.stationName} stood at {stationMeanC.toFixed(1).replace('-', '−')} °C in the mean.
+          {capital(flag.stationName ?? 'the station')} stood at {stationMeanC.toFixed(1).replace('-', '−')} °C
+          in the mean.
         </p>
       )}
       <Verdict flag={flag} />
@@ -64,9 +71,18 @@ function Group({ title, children }: { title: string; children: React.ReactNode }
   )
 }
 
-function Row({ row, reach, name }: { row: AgainstTrend; reach: number; name: React.ReactNode }) {
+function Row({
+  row,
+  reach,
+  name,
+  isBar,
+}: {
+  row: AgainstTrend
+  reach: number
+  name: React.ReactNode
+  isBar: boolean
+}) {
   const value = shownWithUnit(row.attribute, row.value)
-  const isBar = row.differencePercent !== null && !row.isBeyond
   const weight = row.isFlagged || row.isBeyond ? 'font-650' : ''
   return (
     <li className="flex min-h-[31px] items-center justify-between gap-4 text-15">
@@ -81,6 +97,7 @@ function Row({ row, reach, name }: { row: AgainstTrend; reach: number; name: Rea
             scatter={row.scatterPercent}
             reach={reach}
             isFlagged={row.isFlagged}
+            isBeyond={row.isBeyond}
           />
         </>
       ) : (
@@ -93,6 +110,13 @@ function Row({ row, reach, name }: { row: AgainstTrend; reach: number; name: Rea
   )
 }
 
+/** Where an attribute was read on several jars of the pull, each is named. */
+function jarRowName(row: AgainstTrend, rows: AgainstTrend[]): string {
+  const name = attributeName(row.attribute)
+  const isAlone = rows.filter((one) => one.attribute === row.attribute).length === 1
+  return isAlone || !row.jarCode ? name : `${name}, jar ${row.jarCode}`
+}
+
 function SeriesName({ row, flag }: { row: AgainstTrend; flag: FlagPage }) {
   const isSameBatch = row.batchCode === flag.batchCode
   return (
@@ -100,7 +124,7 @@ function SeriesName({ row, flag }: { row: AgainstTrend; flag: FlagPage }) {
       {row.studyCode}
       {isSameBatch ? '' : `, ${row.batchCode},`} {row.isFreezeThaw ? 'in ' : 'at '}
       <span style={{ fontWeight: row.isFreezeThaw ? 430 : heatWeight(row.temperatureC ?? 25) }}>
-        {stationText(row)}
+        {whole(stationText(row))}
       </span>
     </>
   )
@@ -124,7 +148,7 @@ function Verdict({ flag }: { flag: FlagPage }) {
 /** A round reach that holds nearly all; what lies further is an arrow. */
 function reachOf(rows: AgainstTrend[]): number {
   const sizes = rows.flatMap((row) =>
-    row.differencePercent === null || row.isBeyond
+    row.differencePercent === null
       ? []
       : [Math.max(Math.abs(row.differencePercent), 2 * (row.scatterPercent ?? 0))],
   )

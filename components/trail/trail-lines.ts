@@ -1,0 +1,38 @@
+import { minuteText } from '@/lib/report/rules'
+import { dayIn, spokenDay } from '@/lib/study/rules/calendar'
+import { capital } from '@/lib/study/rules/words'
+import type { TrailPage } from '@/lib/trail/queries'
+import { aboutRow, changesOf, type Change } from './trail-changes'
+import { actWord, thingWord } from './trail-words'
+
+/** One entry as it is read: words only, so that a case's whole frozen content does not travel with its page. */
+export type TrailLine = {
+  id: number
+  who: string
+  when: string
+  day: string
+  isShifted: boolean
+  thing: string
+  name: string | null
+  href: string | null
+  act: string
+  isUpdate: boolean
+  changes: Change[]
+  reason: string | null
+}
+
+export function trailLines({ entries }: TrailPage, zone: string): TrailLine[] {
+  return entries.map((entry) => ({
+    id: entry.id,
+    who: entry.actorName,
+    when: minuteText(entry.at, zone),
+    day: spokenDay(dayIn(zone, entry.at)),
+    isShifted: entry.isShifted,
+    thing: capital(thingWord(entry.tableName)),
+    ...aboutRow(entry),
+    act: actWord(entry),
+    isUpdate: entry.operation === 'update',
+    changes: changesOf(entry, zone),
+    reason: entry.reason,
+  }))
+}

@@ -1,0 +1,82 @@
+/** What the record calls its tables, fields and acts: the product's own words instead of the database's. */
+
+export const tableWords: Record<string, string> = {
+  batch: 'batch',
+  batch_step: 'process step of a batch',
+  batch_weighing: 'weighing of a batch',
+  calibration: 'calibration',
+  client: 'client',
+  cycle_step: 'half of a freeze-thaw cycle',
+  flag: 'flag',
+  flag_comment: 'comment on a flag',
+  formula: 'formula',
+  formula_line: 'line of a formula',
+  formula_step: 'process step of a formula',
+  formula_version: 'version of a formula',
+  ingredient: 'ingredient',
+  instrument: 'instrument',
+  jar: 'jar',
+  lab: 'lab',
+  person: 'person',
+  photo: 'photo',
+  protocol: 'protocol',
+  protocol_version: 'version of a protocol',
+  pull: 'pull',
+  pull_jar: 'jar of a pull',
+  reading: 'reading',
+  shelf_case: 'case',
+  signature: 'signature',
+  station: 'station',
+  station_temperature: 'temperature of a station',
+  study: 'study',
+  study_batch: 'batch of a study',
+  study_follower: 'follower of a study',
+  study_station: 'station of a study',
+}
+
+const actWords: Record<string, string> = { insert: 'made', update: 'changed', delete: 'removed' }
+
+export function thingWord(table: string | null): string {
+  return table === null ? '' : (tableWords[table] ?? table.replaceAll('_', ' '))
+}
+
+export function actWord(entry: { operation: string; event: string | null }): string {
+  return entry.event ?? actWords[entry.operation] ?? entry.operation
+}
+
+const fieldNames: Record<string, string> = {
+  sha256: 'SHA-256',
+  content_sha256: 'SHA-256 of the content',
+  ph: 'pH',
+  rpm: 'rpm',
+  is_void: 'void',
+  is_active: 'active',
+  inci: 'INCI name',
+  on_day: 'day',
+  due_on: 'due on',
+  at_weeks: 'at week',
+  time_weeks: 'at week',
+  end_weeks: 'ends at week',
+}
+
+/** Units that a field's name carries, said after its value. */
+const units: [RegExp, string][] = [
+  [/_percent$/, ' %'],
+  [/_mm$/, ' mm'],
+  [/_g$/, ' g'],
+  [/_c$/, ' °C'],
+  [/_weeks$/, ''],
+  [/_hours$/, ' h'],
+  [/_minutes$/, ' min'],
+]
+
+export function fieldWord(field: string): string {
+  const known = fieldNames[field]
+  if (known) return known
+  const bare = units.reduce((name, [ending]) => name.replace(ending, ''), field)
+  return bare.replace(/^is_/, '').replaceAll('_', ' ')
+}
+
+export function fieldUnit(field: string): string {
+  return units.find(([ending]) => ending.test(field))?.[1] ?? ''
+}
