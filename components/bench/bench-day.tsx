@@ -101,23 +101,25 @@ function Station({ station, isOpen, kept, onPick, onOpen }: StationProps) {
             borderBottom: `${line}px ${station.kind === 'freeze-thaw' ? 'dashed' : 'solid'} var(--ink)`,
           }}
         >
-          <span className="w-[96px] shrink-0 pb-1">
+          <span className="w-[84px] shrink-0 pb-1 sm:w-[96px]">
             <StationLabel celsius={celsius} name="freeze thaw" size={isOpen ? 50 : 36} />
           </span>
-          <span className="flex min-w-0 flex-1 flex-wrap items-end gap-x-2 gap-y-1">
-            {station.jars.slice(0, 24).map((jar) => (
-              <span
-                key={jar.pullJarId}
-                className={kept.has(jar.code) ? 'border-x-2 border-b-2 border-ink px-0.5' : ''}
-              >
-                <TinyJar
-                  standing={jar.standing}
-                  layers={jar.layers}
-                  state={kept.has(jar.code) ? 'done' : jar.state}
-                  height={isOpen ? 44 : 34}
-                />
-              </span>
-            ))}
+          <span className="flex min-w-0 flex-1 flex-wrap items-end gap-x-1 gap-y-1 sm:gap-x-2">
+            {inOrder(station.jars)
+              .slice(0, 24)
+              .map((jar) => (
+                <span
+                  key={jar.pullJarId}
+                  className={kept.has(jar.code) ? 'border-x-2 border-b-2 border-ink px-0.5' : ''}
+                >
+                  <TinyJar
+                    standing={jar.standing}
+                    layers={jar.layers}
+                    state={kept.has(jar.code) ? 'done' : jar.state}
+                    height={isOpen ? 44 : 34}
+                  />
+                </span>
+              ))}
             {station.jars.length > 24 ? (
               <span className="pb-1 text-17">and {station.jars.length - 24}</span>
             ) : null}
@@ -143,6 +145,12 @@ function Station({ station, isOpen, kept, onPick, onOpen }: StationProps) {
       ) : null}
     </li>
   )
+}
+
+/** What is read stands first, as it fills along the shelf; what is to come is dotted behind it. */
+function inOrder(jars: BenchStation['jars']): BenchStation['jars'] {
+  const rank = { done: 0, missed: 1, resting: 2, due: 3 }
+  return jars.toSorted((a, b) => rank[a.state] - rank[b.state])
 }
 
 function remark(station: BenchStation, open: number, leaning: number): string {

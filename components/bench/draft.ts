@@ -57,19 +57,25 @@ export type DraftEntry = {
 }
 
 /** What would be sent: one entry for each field that has something typed. Both layers make one entry. */
-export function entriesOf(slots: Slot[], draft: Draft, fillHeightMm: number | null): DraftEntry[] {
+export function entriesOf(
+  slots: Slot[],
+  draft: Draft,
+  fillHeightMm: number | null,
+  instrumentOf: (slot: Slot) => string | null,
+): DraftEntry[] {
   const seen = new Set<string>()
   return slots.flatMap((slot): DraftEntry[] => {
     const id = `${slot.field.attribute}.${slot.replicate}`
     if (seen.has(id)) return []
     seen.add(id)
     const text = (key: string) => (draft.texts[key] ?? '').trim()
+    const instrument = draft.instruments[id] ?? instrumentOf(slot)
     const base = {
       id: draft.ids[id] ?? newId(),
       attribute: slot.field.attribute,
       replicate: slot.replicate,
       isConfirmed: draft.confirmed.includes(id),
-      ...(draft.instruments[id] ? { instrumentId: draft.instruments[id] } : {}),
+      ...(instrument ? { instrumentId: instrument } : {}),
     }
     if (slot.kind === 'layer') {
       const [top, bottom] = [text(`${slot.field.attribute}.top`), text(`${slot.field.attribute}.bottom`)]

@@ -1,6 +1,6 @@
 import { TinyJar } from '@/components/bench/tray'
 import type { BenchJar } from '@/lib/bench/queries/today'
-import { dayText } from '@/lib/report/rules'
+import { shortDay } from '@/lib/report/rules'
 
 const asks = { watch: 'look, stays sealed', measuring: 'opened once', repeat: 'repeat on a spare' }
 
@@ -68,8 +68,8 @@ function windowText(jar: BenchJar, isKept: boolean): string {
   if (jar.isReady) return 'rested, ready'
   if (jar.state === 'resting' && jar.restUntil)
     return `rests until ${new Date(jar.restUntil).toLocaleTimeString('en-GB', { hour: '2-digit', minute: '2-digit' })}`
-  if (jar.isOverdue) return `was due by ${dayText(jar.windowTo)}`
-  return jar.isLastDay ? 'today only' : `by ${dayText(jar.windowTo)}`
+  if (jar.isOverdue) return `was due by ${shortDay(jar.windowTo)}`
+  return jar.isLastDay ? 'today only' : `by ${shortDay(jar.windowTo)}`
 }
 
 function Chevron() {

@@ -42,7 +42,7 @@ export function JarRuler({ fillMm, topMm, bottomMm, lastTopMm, lastBottomMm, onT
     <svg
       ref={svg}
       viewBox={`0 0 ${view.width} ${view.height}`}
-      className="h-auto w-full touch-none select-none"
+      className="mx-auto max-h-[46dvh] w-full touch-none select-none sm:max-h-[350px]"
       role="img"
       aria-label={`The jar: fill ${fillMm} mm, oil on top ${topMm.toFixed(1)} mm, water below ${bottomMm.toFixed(1)} mm`}
     >

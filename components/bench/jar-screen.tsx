@@ -5,6 +5,7 @@ import useSWR from 'swr'
 import { AskAgain, TwoPeople, type AlreadyRead } from '@/components/bench/answers'
 import type { BenchPerson } from '@/components/bench/bench-app'
 import { entriesOf, slotsOf, withIds } from '@/components/bench/draft'
+import { dayInstrument, rememberInstrument } from '@/components/bench/day-instrument'
 import { DonePanel } from '@/components/bench/done-panel'
 import { JarHead } from '@/components/bench/jar-head'
 import { LayersPanel } from '@/components/bench/layers-panel'
@@ -76,7 +77,10 @@ function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }: OpenP
   const [twice, setTwice] = useState<AlreadyRead | null>(null)
   const [isMissing, setMissing] = useState(false)
   const [isBusy, setBusy] = useState(false)
-  const entries = useMemo(() => entriesOf(slots, draft, jar.fillHeightMm), [slots, draft, jar.fillHeightMm])
+  const entries = useMemo(
+    () => entriesOf(slots, draft, jar.fillHeightMm, (s) => dayInstrument(jar, s)),
+    [slots, draft, jar],
+  )
   const entryOf = (attribute: string, replicate: number) =>
     entries.find((e) => e.attribute === attribute && e.replicate === replicate)
   const verdicts = slots.map((slot) => ({
@@ -117,7 +121,7 @@ function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }: OpenP
     const confirmed = [...new Set([...filled.confirmed, ...(extra.confirmed ?? [])])]
     const sending = { ...filled, confirmed }
     setDraft(() => sending)
-    const readings = entriesOf(slots, sending, jar.fillHeightMm)
+    const readings = entriesOf(slots, sending, jar.fillHeightMm, (s) => dayInstrument(jar, s))
     const body = {
       version: extra.version ?? jar.version,
       claimedAt: new Date().toISOString(),
@@ -251,13 +255,16 @@ function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }: OpenP
                 slot={slot}
                 text={draft.texts[slot.key] ?? ''}
                 verdict={verdicts.find((v) => v.slot.key === slot.key)!.verdict}
-                instrument={draft.instruments[`${slot.field.attribute}.${slot.replicate}`] ?? null}
-                onInstrument={(id) =>
+                instrument={
+                  draft.instruments[`${slot.field.attribute}.${slot.replicate}`] ?? dayInstrument(jar, slot)
+                }
+                onInstrument={(id) => {
+                  rememberInstrument(slot, id)
                   setDraft((d) => ({
                     ...d,
                     instruments: { ...d.instruments, [`${slot.field.attribute}.${slot.replicate}`]: id },
                   }))
-                }
+                }}
                 onText={(text) => type(slot.key, text)}
                 onEnter={step}
                 keepButton={

@@ -7,7 +7,7 @@ import { bandText, type Verdict } from '@/components/bench/verdict'
 import { StandingMark } from '@/components/marks/standing-mark'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 import { readTyped } from '@/lib/reading/schema/typed'
-import { dayText } from '@/lib/report/rules'
+import { shortDay } from '@/lib/report/rules'
 
 type Props = {
   jar: BenchJarPage
@@ -31,17 +31,19 @@ export function LayersPanel({ jar, slots, draft, verdicts, at, onPick, onText }:
   const set = (slot: Slot, value: number) =>
     onText(slot.key, (Math.round(Math.max(0, Math.min(fill, value)) * 10) / 10).toFixed(1))
   return (
-    <div className="grid grid-cols-[minmax(0,150px)_minmax(0,1fr)] gap-x-4 gap-y-3 px-4 pt-3 sm:grid-cols-[380px_minmax(0,1fr)] sm:px-7">
-      <JarRuler
-        fillMm={fill}
-        topMm={mm(top)}
-        bottomMm={mm(bottom)}
-        lastTopMm={lastMm(top, 'topMm')}
-        lastBottomMm={lastMm(top, 'bottomMm')}
-        onTop={(value) => set(top, value)}
-        onBottom={(value) => set(bottom, value)}
-      />
-      <div className="flex min-w-0 flex-col justify-between gap-3">
+    <div className="grid grid-cols-[128px_minmax(0,1fr)] items-center gap-x-4 gap-y-2 px-4 pt-3 [grid-template-areas:'jar_sep''top_top''low_low'] sm:grid-cols-[320px_minmax(0,1fr)] sm:px-7 sm:[grid-template-areas:'jar_top''jar_sep''jar_low']">
+      <div className="[grid-area:jar]">
+        <JarRuler
+          fillMm={fill}
+          topMm={mm(top)}
+          bottomMm={mm(bottom)}
+          lastTopMm={lastMm(top, 'topMm')}
+          lastBottomMm={lastMm(top, 'bottomMm')}
+          onTop={(value) => set(top, value)}
+          onBottom={(value) => set(bottom, value)}
+        />
+      </div>
+      <div className="[grid-area:top]">
         <Layer
           title="Oil on top"
           text={draft.texts[top.key] ?? ''}
@@ -50,25 +52,32 @@ export function LayersPanel({ jar, slots, draft, verdicts, at, onPick, onText }:
           onPick={() => onPick(top.key)}
           onStep={(by) => set(top, mm(top) + by)}
         />
-        <div aria-live="polite">
-          <p className="flex flex-wrap items-baseline justify-between gap-x-3">
-            <b className="text-18">Separation</b>
-            <span className="text-17">{bandText(top.field)}</span>
+      </div>
+      <div aria-live="polite" className="min-w-0 [grid-area:sep]">
+        <p className="flex flex-wrap items-baseline justify-between gap-x-3">
+          <b className="text-18">Separation</b>
+          <span className="text-17">{bandText(top.field)}</span>
+        </p>
+        <div className="flex items-center justify-between gap-4">
+          <p className={`text-44 font-700 leading-none sm:text-64 ${isOut ? 'text-alarm' : ''}`}>
+            {verdict?.state === 'value' ? verdict.value.toFixed(1) : '–'}
+            <span className="text-24 sm:text-36"> %</span>
           </p>
-          <div className="flex items-center justify-between gap-4">
-            <p className={`text-48 font-700 leading-none sm:text-76 ${isOut ? 'text-alarm' : ''}`}>
-              {verdict?.state === 'value' ? verdict.value.toFixed(1) : '–'}
-              <span className="text-24 sm:text-36"> %</span>
+          {verdict?.state === 'value' ? (
+            <p className={`flex items-end gap-3 text-24 font-650 sm:text-30 ${isOut ? 'text-alarm' : ''}`}>
+              <StandingMark standing={isOut ? 'out' : 'steady'} size={34} />
+              <span className="hidden sm:inline">{isOut ? 'out' : 'inside'}</span>
             </p>
-            {verdict?.state === 'value' ? (
-              <p className={`flex items-end gap-3 text-24 font-650 sm:text-30 ${isOut ? 'text-alarm' : ''}`}>
-                <StandingMark standing={isOut ? 'out' : 'steady'} size={34} />
-                <span className="hidden sm:inline">{isOut ? 'out' : 'inside'}</span>
-              </p>
-            ) : null}
-          </div>
-          <FieldBand field={top.field} now={verdict?.state === 'value' ? verdict.value : null} width={380} />
+          ) : null}
         </div>
+        <FieldBand
+          field={top.field}
+          now={verdict?.state === 'value' ? verdict.value : null}
+          width={380}
+          isQuiet
+        />
+      </div>
+      <div className="[grid-area:low]">
         <Layer
           title="Water below"
           text={draft.texts[bottom.key] ?? ''}
@@ -93,7 +102,7 @@ type LayerProps = {
 
 function Layer({ title, text, isHere, last, onPick, onStep }: LayerProps) {
   return (
-    <div className="flex flex-wrap items-center justify-between gap-3">
+    <div className="flex items-center justify-between gap-3">
       <button
         type="button"
         onClick={onPick}
@@ -101,7 +110,7 @@ function Layer({ title, text, isHere, last, onPick, onStep }: LayerProps) {
         className={`min-h-16 rounded text-left ${isHere ? 'border-b-[3px] border-ink' : 'border-b-[3px] border-transparent'}`}
       >
         <b className="block text-18">{title}</b>
-        <span className="text-36 font-650 leading-none sm:text-64">{text === '' ? '–' : text}</span>
+        <span className="text-36 font-650 leading-none sm:text-50">{text === '' ? '–' : text}</span>
         <span className="text-20 sm:text-30"> mm</span>
         {last ? (
           <span className="block text-17">
@@ -155,5 +164,5 @@ function lastMm(slot: Slot, part: 'topMm' | 'bottomMm'): number | null {
 function lastText(slot: Slot, part: 'topMm' | 'bottomMm'): string | null {
   const last = slot.field.last[0]
   const value = lastMm(slot, part)
-  return last && value !== null ? `${value.toFixed(1)} on ${dayText(last.day)}` : null
+  return last && value !== null ? `${value.toFixed(1)} on ${shortDay(last.day)}` : null
 }

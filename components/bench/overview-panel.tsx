@@ -11,7 +11,7 @@ import { ErrorNote } from '@/components/ui/error-note'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 import { send } from '@/lib/http/fetcher'
 import { pullKeys } from '@/lib/pull/schema'
-import { dayText, figure } from '@/lib/report/rules'
+import { figure, shortDay } from '@/lib/report/rules'
 
 type Props = {
   jar: BenchJarPage
@@ -44,16 +44,18 @@ export function OverviewPanel({ jar, tabs, at, onPick, onChange }: Props) {
                 type="button"
                 onClick={() => onPick(key)}
                 aria-pressed={key === at}
-                className="grid min-h-16 w-full grid-cols-[minmax(0,1fr)_auto] items-center gap-x-4 py-2 text-left sm:grid-cols-[170px_220px_minmax(0,1fr)]"
+                className="grid min-h-16 w-full grid-cols-[minmax(0,1fr)_auto] items-center gap-x-4 py-2 text-left sm:grid-cols-[220px_150px_minmax(0,1fr)]"
               >
                 <span className={key === at ? 'font-700' : ''}>
                   {slotLabel(slot)}
-                  <span className="block text-17 font-430 text-soft">{bandText(slot.field)}</span>
+                  <span className="block whitespace-nowrap text-17 font-430 text-soft">
+                    {bandText(slot.field)}
+                  </span>
                 </span>
                 <span className="hidden sm:block">
                   {slot.kind === 'word' ? null : (
                     <BandBar
-                      width={200}
+                      width={150}
                       lower={slot.field.band?.lower ?? null}
                       upper={slot.field.band?.upper ?? null}
                       initial={slot.field.initial}
@@ -64,13 +66,12 @@ export function OverviewPanel({ jar, tabs, at, onPick, onChange }: Props) {
                 </span>
                 <span className="text-right text-17 sm:text-left">
                   {slot.field.last.length === 0 ? 'first reading' : <HollowDot />}{' '}
-                  {slot.field.last
-                    .slice(0, 3)
-                    .map(
-                      (l) =>
-                        `${l.word ?? (l.value === null ? l.typed : figure(slot.field.attribute, l.value))} (${shortDay(l.day)})`,
-                    )
-                    .join(', ')}
+                  {slot.field.last.slice(0, 3).map((l) => (
+                    <span key={l.readingId} className="mr-3 inline-block whitespace-nowrap">
+                      {l.word ?? (l.value === null ? l.typed : figure(slot.field.attribute, l.value))}{' '}
+                      <span className="text-soft">{shortDay(l.day)}</span>
+                    </span>
+                  ))}
                 </span>
               </button>
             </li>
@@ -108,8 +109,4 @@ function TakeOut({ jar, onChange }: { jar: BenchJarPage; onChange: () => void })
       <ErrorNote error={error} />
     </div>
   )
-}
-
-function shortDay(day: string): string {
-  return dayText(day).replace(/ \d{4}$/, '')
 }

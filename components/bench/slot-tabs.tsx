@@ -19,30 +19,39 @@ export function SlotTabs({ tabs, at, onPick, note, hasPhotos }: Props) {
       aria-label="What is measured"
       className="mt-3 flex gap-3 overflow-x-auto px-4 sm:px-5"
     >
-      {tabs.map((tab) => (
+      {top && bottom ? (
         <Tab
-          key={tab.key}
-          label={slotLabel(tab.slot)}
+          label="Layers"
           text={
-            tab.text === '' ? 'not yet' : `${tab.text} ${tab.slot.kind === 'word' ? '' : slotUnit(tab.slot)}`
+            top.text === '' && bottom.text === ''
+              ? 'not yet'
+              : `${top.text || '0'} and ${bottom.text || '0'} mm`
           }
-          isHere={tab.key === at}
-          mark={
-            tab.verdict.state === 'value'
-              ? tab.verdict.isOut
-                ? 'out'
-                : 'in'
-              : tab.verdict.state === 'impossible'
-                ? 'wrong'
-                : null
-          }
-          onPick={() => onPick(tab.key)}
+          isHere={at === top.key || at === bottom.key}
+          mark={markOf(top.verdict)}
+          onPick={() => onPick(top.key)}
         />
-      ))}
+      ) : null}
+      {tabs
+        .filter((tab) => tab.slot.kind !== 'layer')
+        .map((tab) => (
+          <Tab
+            key={tab.key}
+            label={slotLabel(tab.slot)}
+            text={
+              tab.text === ''
+                ? 'not yet'
+                : `${tab.text} ${tab.slot.kind === 'word' ? '' : slotUnit(tab.slot)}`
+            }
+            isHere={tab.key === at}
+            mark={markOf(tab.verdict)}
+            onPick={() => onPick(tab.key)}
+          />
+        ))}
       {hasPhotos ? (
         <Tab
           label="Photo"
-          text="jar in its light"
+          text="take one"
           isHere={at === 'photo'}
           mark={null}
           onPick={() => onPick('photo')}
@@ -57,6 +66,11 @@ export function SlotTabs({ tabs, at, onPick, note, hasPhotos }: Props) {
       />
     </div>
   )
+}
+
+function markOf(verdict: Verdict): TabProps['mark'] {
+  if (verdict.state === 'impossible') return 'wrong'
+  return verdict.state === 'value' ? (verdict.isOut ? 'out' : 'in') : null
 }
 
 type TabProps = {

@@ -1,6 +1,7 @@
 'use client'
 
 import { useEffect, useRef, type ReactNode } from 'react'
+import { instrumentKind } from '@/components/bench/day-instrument'
 import type { Slot } from '@/components/bench/draft'
 import { bandText, slotLabel, slotUnit, type Verdict } from '@/components/bench/verdict'
 import { BandBar } from '@/components/marks/band-bar'
@@ -39,15 +40,8 @@ export function ValuePanel({
     verdict.state === 'impossible' &&
     (slot.kind !== 'layer' || verdict.part === null || verdict.part === slot.part)
   useEffect(() => input.current?.focus({ preventScroll: true }), [slot.key])
-  const instruments = jar.instruments.filter((i) =>
-    slot.kind === 'torque'
-      ? i.kind === 'viscometer'
-      : field.attribute === 'ph'
-        ? i.kind === 'meter'
-        : slot.kind === 'gross'
-          ? i.kind === 'balance'
-          : false,
-  )
+  const kind = instrumentKind(slot)
+  const instruments = jar.instruments.filter((i) => i.kind === kind)
   return (
     <div className="grid gap-x-7 gap-y-4 sm:grid-cols-[minmax(0,1fr)_300px]">
       <div className="min-w-0">
@@ -165,7 +159,10 @@ export function FieldBand({
         title={`${field.label}, ${bandText(field)}`}
         className="max-w-full"
       />
-      <p className="flex justify-between text-17 text-soft" style={{ maxWidth: width }}>
+      <p
+        className={`justify-between gap-3 text-17 text-soft ${isQuiet ? 'hidden' : 'flex'}`}
+        style={{ maxWidth: width }}
+      >
         <span>{bandText(field)}</span>
         {field.initial !== null && marks.length > 0 ? (
           <span>initial {figure(field.attribute, field.initial)}</span>

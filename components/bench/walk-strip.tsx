@@ -6,7 +6,7 @@ import type { Bench } from '@/lib/bench/queries/today'
 export function WalkStrip({ bench, code }: { bench: Bench; code: string }) {
   const stations = bench.stations.filter((s) => s.jars.length > 0)
   return (
-    <nav aria-label="Today’s walk" className="overflow-x-auto bg-recess px-4 pb-2 pt-2 sm:px-7">
+    <nav aria-label="Today’s walk" className="hidden overflow-x-auto bg-recess sm:block px-7 py-2">
       <p className="text-17">
         <b>{bench.counts.done}</b> of {bench.counts.total} jars read
       </p>

@@ -17,6 +17,11 @@ export function dayText(iso: string): string {
   return format(new Date(`${iso.slice(0, 10)}T12:00:00`), 'd MMM yyyy')
 }
 
+/** 2 Mar, where the year goes without saying. */
+export function shortDay(iso: string): string {
+  return dayText(iso).replace(/ \d{4}$/, '')
+}
+
 /** Thousands with a thin gap: 41 600. */
 export function grouped(value: string): string {
   const [whole = '', rest] = value.split('.')

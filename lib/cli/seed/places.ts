@@ -115,7 +115,11 @@ export async function fillPlaces(filling: Filling): Promise<Places> {
         await logCalibration(
           trx,
           mada,
-          newCalibration.parse({ id: newId(), dueOn: isoDay(daysAgo(filling, days - 190)), ...check }),
+          newCalibration.parse({
+            id: newId(),
+            dueOn: isoDay(new Date(at.getTime() + 190 * 24 * 3600 * 1000)),
+            ...check,
+          }),
           now,
         )
     })
