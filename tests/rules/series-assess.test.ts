@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest'
 import type { Frame, FrameReading } from '@/lib/series/queries/frame'
 import { assessStudy } from '@/lib/series/rules/assess'
 import { repeatabilitySd, seriesUnits } from '@/lib/series/rules/input'
+import { ruleSentence, sentenceContext } from '@/lib/series/rules/spoken'
 
 const startedAt = '2026-03-02T09:00:00.000Z'
 const weekMs = 604_800_000
@@ -165,5 +166,20 @@ describe('doubts', () => {
       { instrumentId: 'other', attribute: 'ph', direction: 'high', day: '2026-03-30' },
     ])
     for (const { finding } of assessed) expect(finding.latest).toBeCloseTo(5.5)
+  })
+})
+
+describe('sentences', () => {
+  it('a look beyond the band is said in its word, not as a distance', () => {
+    const context = sentenceContext(frame([]).study, frame([]).study.stations[2]!, 'look')
+    const rule = {
+      rule: 'out' as const,
+      level: 'doubt' as const,
+      at: 4,
+      evidence: { mean: 2, edge: 1, side: 'upper', by: 1 },
+    }
+    expect(ruleSentence(rule, context, 'look')).toBe(
+      'Look at 45 °C is "changed", beyond the band. Look at a second jar before anyone worries.',
+    )
   })
 })

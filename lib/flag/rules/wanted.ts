@@ -1,9 +1,8 @@
 import { ownRules, type Assessed } from '@/lib/series/rules/assess'
 import type { EntryDoubt, Frame } from '@/lib/series/queries/frame'
 import { commonShift, type ShiftedDay } from '@/lib/series/rules/shifted-day'
-import { sentenceContext } from '@/lib/series/rules/spoken'
+import { ruleSentence, sentenceContext } from '@/lib/series/rules/spoken'
 import type { RuleFinding } from '@/lib/science/series'
-import { sentenceOf } from '@/lib/science/sentence'
 import { inSentence } from '@/lib/study/rules/finding'
 import { spokenDay } from '@/lib/study/rules/calendar'
 
@@ -52,7 +51,7 @@ function fromRules(frame: Frame, { unit, finding }: Assessed): WantedFlag[] {
     level: rule.level as FlagLevel,
     readingId: rule.readingId ?? null,
     atWeeks: rule.at,
-    sentence: sentenceOf(rule, context),
+    sentence: ruleSentence(rule, context, unit.attribute),
     evidence: rule.evidence,
   }))
 }

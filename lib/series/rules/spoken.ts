@@ -1,6 +1,7 @@
-import type { AttributeKey } from '@/lib/reading/schema/attributes'
+import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
 import { shownWithUnit } from '@/lib/study/rules/words'
-import type { SentenceContext } from '@/lib/science/sentence'
+import { sentenceOf, type SentenceContext } from '@/lib/science/sentence'
+import type { RuleFinding } from '@/lib/science/series'
 import { addDays, dayIn, spokenDay } from '@/lib/study/rules/calendar'
 import { degrees, inSentence } from '@/lib/study/rules/finding'
 import type { Frame, FrameStation } from '../queries/frame'
@@ -25,4 +26,13 @@ export function sentenceContext(
       `week ${Math.round(time)} (${spokenDay(addDays(startedOn, Math.round(time * 7)), false)})`,
     isRelative: attribute === 'viscosity',
   }
+}
+
+/** What a rule found in this study's words. A step between words is no distance, so it is not told as one. */
+export function ruleSentence(rule: RuleFinding, context: SentenceContext, attribute: AttributeKey): string {
+  const { label, kind } = attributeOf(attribute)
+  const { mean, repeat } = rule.evidence
+  const isSingle = rule.rule === 'out' && rule.level === 'doubt' && typeof repeat !== 'number'
+  if (kind !== 'word' || !isSingle || typeof mean !== 'number') return sentenceOf(rule, context)
+  return `${label} at ${context.station} is "${context.value(mean)}", beyond the band. Look at a second jar before anyone worries.`
 }
