@@ -1,4 +1,3 @@
-import { Fragment } from 'react'
 import { JarGlyph } from '@/components/marks/jar-glyph'
 import { heatLine } from '@/components/marks/heat'
 import { StationLabel } from '@/components/ui/station-label'
@@ -23,6 +22,9 @@ export function FlagShelf({ shelf, attribute, detectionPercent, allowed }: Props
   const cells = read.slice(-shownJars)
   if (cells.length === 0) return null
   const { station } = shelf
+  // Where the shelf is short, the earliest gives way.
+  const roomFor = (index: number) =>
+    index === 0 && cells.length === shownJars ? 'max-sm:hidden md:max-lg:hidden' : ''
   const line = station.isFreezeThaw ? 1.5 : heatLine(station.temperatureC ?? 25)
   return (
     <figure aria-label={`Jars at ${station.name}`} className="min-w-0">
@@ -33,8 +35,8 @@ export function FlagShelf({ shelf, attribute, detectionPercent, allowed }: Props
         <span className="w-[92px] shrink-0 pb-2 sm:w-[104px]">
           <StationLabel celsius={station.isFreezeThaw ? null : station.temperatureC} size={44} />
         </span>
-        {cells.map((cell) => (
-          <span key={cell.weeks} className="flex flex-1 justify-center">
+        {cells.map((cell, index) => (
+          <span key={cell.weeks} className={`flex flex-1 justify-center ${roomFor(index)}`}>
             <JarGlyph
               height={56}
               posture={cell.posture}
@@ -51,19 +53,17 @@ export function FlagShelf({ shelf, attribute, detectionPercent, allowed }: Props
           {attributeName(attribute)}
           {allowed ? <span className="block text-13 text-soft">{allowed}</span> : null}
         </span>
-        {cells.map((cell) => {
+        {cells.map((cell, index) => {
           const value = cell.values.find((one) => one.attribute === attribute)
           return (
-            <span key={cell.weeks} className="flex-1 text-center text-15 leading-tight">
+            <span key={cell.weeks} className={`flex-1 text-center text-15 leading-tight ${roomFor(index)}`}>
               <span className={value?.isOut ? 'font-700 text-alarm' : ''}>
                 {value?.now === null || !value ? 'not read' : value.text.replace(/ (%|mPa·s)$/, '')}
               </span>
               <span className="block text-13 text-soft">
                 {cell.pullLabel}
-                <Fragment>
-                  <br />
-                  {cell.dueOn ? spokenDay(cell.dueOn, false) : ''}
-                </Fragment>
+                <br />
+                {cell.dueOn ? spokenDay(cell.dueOn, false) : ''}
               </span>
             </span>
           )

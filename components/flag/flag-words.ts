@@ -91,7 +91,9 @@ export function isDownwards(flag: FlagPage): boolean {
   return value !== null && initial !== undefined && value < initial
 }
 
-/** A number is not parted from its unit at the end of a line. */
+/** A number is parted neither from its unit nor at its thin gap at the end of a line. */
 export function whole(text: string): string {
-  return text.replace(/(\d) (%|°C|mPa·s|micrometres|rpm|days?|times)/g, '$1\u00a0$2')
+  return text
+    .replace(/\u2009/g, '\u2060\u2009\u2060')
+    .replace(/(\d) (%|°C|mPa·s|rpm|days?|times)/g, '$1\u00a0$2')
 }

@@ -30,6 +30,7 @@ export function Moved({ flag, stationMeanC }: { flag: FlagPage; stationMeanC: nu
               row={row}
               reach={reach}
               name={<SeriesName row={row} flag={flag} />}
+              isBar={row.differencePercent !== null}
             />
           ))}
         </Group>
@@ -102,7 +103,7 @@ function Row({
         </>
       ) : (
         <span className={row.isBeyond ? 'text-right font-700 text-alarm' : 'text-right'}>
-          {value}
+          {whole(value)}
           {row.isBeyond ? `, ${allowed(row)}: beyond` : ''}
         </span>
       )}

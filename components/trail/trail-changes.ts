@@ -9,8 +9,9 @@ export type Change = { field: string; before: string | null; after: string | nul
 
 /** Of a changed row what differs; of a new or removed one what says something to a person. */
 export function changesOf(
-  entry: { operation: string; before: unknown; after: unknown; actorId: string; actorName: string },
+  entry: { operation: string; before: unknown; after: unknown },
   zone: string,
+  people: ReadonlyMap<string, string>,
 ): Change[] {
   const was = rowOf(entry.before)
   const became = rowOf(entry.after)
@@ -37,9 +38,13 @@ export function changesOf(
   })
 }
 
+function isPerson(field: string): boolean {
+  return field.endsWith('_by') || field === 'person_id'
+}
+
 /** Ids and counters tell nothing to a person; what they stand for is named beside the entry. */
 function isSilent(field: string): boolean {
-  return /^(id|version)$|_ids?$/.test(field)
+  return !isPerson(field) && /^(id|version)$|_ids?$/.test(field)
 }
 
 function rowOf(value: unknown): Row {
@@ -95,10 +100,11 @@ function nested(value: unknown, zone: string): string | null {
 }
 
 /** How a person knows the row, and where it can be read. */
-export function aboutRow(entry: { tableName: string | null; before: unknown; after: unknown }): {
-  name: string | null
-  href: string | null
-} {
+export function aboutRow(
+  entry: { tableName: string | null; rowId: string | null; before: unknown; after: unknown },
+  people: ReadonlyMap<string, string>,
+): { name: string | null; href: string | null } {
+  if (entry.tableName === 'person') return { name: people.get(entry.rowId ?? '') ?? null, href: null }
   const row = { ...rowOf(entry.before), ...rowOf(entry.after) }
   const text = (field: string) =>
     typeof row[field] === 'string' || typeof row[field] === 'number' ? String(row[field]) : null

@@ -17,11 +17,17 @@ export type TrailLine = {
   href: string | null
   act: string
   isUpdate: boolean
+  /** Something done without a row, such as signing in. */
+  isEvent: boolean
   changes: Change[]
   reason: string | null
 }
 
-export function trailLines({ entries }: TrailPage, zone: string): TrailLine[] {
+export function trailLines(
+  { entries }: TrailPage,
+  zone: string,
+  people: ReadonlyMap<string, string>,
+): TrailLine[] {
   return entries.map((entry) => ({
     id: entry.id,
     who: entry.actorName,
@@ -29,10 +35,11 @@ export function trailLines({ entries }: TrailPage, zone: string): TrailLine[] {
     day: spokenDay(dayIn(zone, entry.at)),
     isShifted: entry.isShifted,
     thing: capital(thingWord(entry.tableName)),
-    ...aboutRow(entry),
+    ...aboutRow(entry, people),
     act: actWord(entry),
     isUpdate: entry.operation === 'update',
-    changes: changesOf(entry, zone),
+    isEvent: entry.operation === 'event',
+    changes: changesOf(entry, zone, people),
     reason: entry.reason,
   }))
 }

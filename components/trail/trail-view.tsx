@@ -65,10 +65,17 @@ export function TrailView({ shown, isStudyKnown, lines, next, timeZone, scope }:
 
 function Headline({ line }: { line: TrailLine | undefined }) {
   if (!line) return <>Nothing is written here</>
+  const what = [line.thing || 'Something', line.name].filter(Boolean).join(' ')
+  // What a person did with themselves, such as signing in, the application wrote down for them.
+  if (line.isEvent && line.name)
+    return (
+      <>
+        <b>{line.name}</b> {line.act}, {line.day}
+      </>
+    )
   return (
     <>
-      {[line.thing || 'Something', line.name].filter(Boolean).join(' ')} {line.act} by <b>{line.who}</b>,{' '}
-      {line.day}
+      {what} {line.act} by <b>{line.who}</b>, {line.day}
     </>
   )
 }

@@ -45,6 +45,7 @@ export function actWord(entry: { operation: string; event: string | null }): str
 }
 
 const fieldNames: Record<string, string> = {
+  person_id: 'person',
   sha256: 'SHA-256',
   content_sha256: 'SHA-256 of the content',
   ph: 'pH',

@@ -6,6 +6,7 @@ import type { Actor } from '@/lib/auth/actor'
 import { AppError } from '@/lib/http/errors'
 import { page } from '@/lib/http/page'
 import { getLab } from '@/lib/lab/queries'
+import { listPeople } from '@/lib/person/queries'
 import { getStudyHead } from '@/lib/study/queries/head'
 import { listTrail } from '@/lib/trail/queries'
 
@@ -32,11 +33,12 @@ export default async function TrailPage({ searchParams }: Props) {
           before: shown.before ?? undefined,
           studyId: study?.id,
         })
+  const people = new Map((await listPeople(db, actor)).map((person) => [person.id, person.name]))
   return (
     <TrailView
       shown={shown}
       isStudyKnown={study !== null}
-      lines={trailLines(trail, timeZone)}
+      lines={trailLines(trail, timeZone, people)}
       next={trail.next}
       timeZone={timeZone}
       scope={scopeOf(actor)}
