@@ -88,7 +88,7 @@ export function PhotoPanel({ jar }: { jar: BenchJarPage }) {
       claimedAt: now,
     }))
       form.append(name, value)
-    form.append('photo', file)
+    form.append('file', file)
     try {
       await send(photoKeys.add, 'POST', form)
       await mutate()

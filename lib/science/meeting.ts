@@ -26,6 +26,8 @@ export function boundAt(line: BoundedLine, sign: Side, x: number): number {
 
 export function boundMeets(line: BoundedLine, sign: Side, level: number, from: number): number | null {
   const gap = line.centre - level
+  // Without a width the quadratic has one double root, which rounding can push off the real numbers.
+  if (line.width === 0) return lineMeets(line, gap, from)
   const spread = line.width * line.width
   const roots = quadraticRoots(
     line.slope * line.slope - spread / line.sumSquaresX,
@@ -40,6 +42,12 @@ export function boundMeets(line: BoundedLine, sign: Side, level: number, from: n
   if (found === undefined) return null
   const polished = newtonStep(line, sign, gap, found)
   return Math.max(from, polished + line.centreX)
+}
+
+function lineMeets(line: BoundedLine, gap: number, from: number): number | null {
+  if (line.slope === 0) return null
+  const at = line.centreX - gap / line.slope
+  return at >= from - 1e-9 * (1 + Math.abs(from)) ? Math.max(from, at) : null
 }
 
 /** Squaring lost the sign: the line must be on the other side of the level than its half-width. */

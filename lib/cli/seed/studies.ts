@@ -32,6 +32,11 @@ export async function fillProtocols(filling: Filling): Promise<Protocols> {
   }
   const halfYear = readyMadePlan('screen', 'cream')
   const weeks = [1, 2, 3, 4, 6, 8, 10, 12, 16, 20, 26]
+  // A repeat takes a spare each time a rule asks for one; a cream that comes apart asks often.
+  const withSpares = (plan: ProtocolPlan): ProtocolPlan => ({
+    ...plan,
+    stations: plan.stations.map((s) => ({ ...s, spares: 5 })),
+  })
   const long = readyMadePlan('long-term', 'lotion')
   const longStations = (last: number) =>
     long.stations
@@ -42,12 +47,17 @@ export async function fillProtocols(filling: Filling): Promise<Protocols> {
       }))
   return {
     'screen cream': await make('Prototype screen, cream', readyMadePlan('screen', 'cream')),
-    'screen stiff': await make('Prototype screen, stiff cream', readyMadePlan('screen', 'stiff cream')),
+    'screen stiff': await make(
+      'Prototype screen, stiff cream',
+      withSpares(readyMadePlan('screen', 'stiff cream')),
+    ),
     'screen lotion': await make('Prototype screen, lotion', readyMadePlan('screen', 'lotion')),
     'half year': await make('Half a year, cream', {
-      ...halfYear,
+      ...withSpares(halfYear),
       endWeeks: 26,
-      stations: halfYear.stations.map((s) => (s.kind === 'freeze-thaw' ? s : { ...s, timePoints: weeks })),
+      stations: withSpares(halfYear).stations.map((s) =>
+        s.kind === 'freeze-thaw' ? s : { ...s, timePoints: weeks },
+      ),
     }),
     'two years': await make('Long-term, lotion, 24 months', {
       ...long,
