@@ -36,7 +36,7 @@ export function LinesPart({ formula, handle, isOpen, totals, phases, checks, bef
   const lines = draft.lines.length ? draft.lines : [emptyLine(`${formula.versionId}-first`, 'A', false)]
   const middles = useRowMiddles(sheet, lines.map((line) => line.id).join())
   return (
-    <div className="grid gap-x-8 gap-y-8 xl:grid-cols-[minmax(0,1fr)_572px]">
+    <div className="grid grid-cols-[minmax(0,1fr)] gap-x-8 gap-y-8 xl:grid-cols-[minmax(0,1fr)_572px]">
       <div className="flex">
         <ApartJar amounts={amounts} emulsionType={draft.emulsionType} middles={middles} />
         <div ref={sheet} className="min-w-0 flex-1">

@@ -11,7 +11,7 @@ type Props = { handle: DraftHandle; isOpen: boolean; steps: FormulaStep[]; check
 
 export function ProcessPart({ handle, isOpen, steps, checks }: Props) {
   return (
-    <div className="grid gap-x-10 gap-y-8 xl:grid-cols-[minmax(0,1fr)_300px]">
+    <div className="grid grid-cols-[minmax(0,1fr)] gap-x-10 gap-y-8 xl:grid-cols-[minmax(0,1fr)_300px]">
       {isOpen ? (
         <StepSheet
           steps={handle.draft.steps}
