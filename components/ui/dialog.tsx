@@ -23,7 +23,7 @@ export function Dialog({ isOpen, onClose, title, sentence, density, children, ac
   return (
     <Radix.Root open={isOpen} onOpenChange={(open) => (open ? undefined : onClose())}>
       <Radix.Portal>
-        <Radix.Overlay className="fixed inset-0 z-40 bg-ground/70" />
+        <Radix.Overlay className="fixed inset-0 z-50 bg-ground/70" />
         <Radix.Content
           data-density={density}
           aria-describedby={undefined}
