@@ -16,11 +16,7 @@ export function changesOf(
   const was = rowOf(entry.before)
   const became = rowOf(entry.after)
   const text = (field: string, value: unknown, row: Row) =>
-    field.endsWith('_by')
-      ? value === entry.actorId
-        ? entry.actorName
-        : null
-      : shown(field, value, row, zone)
+    isPerson(field) ? (people.get(String(value)) ?? null) : shown(field, value, row, zone)
   if (entry.operation === 'update') {
     return Object.keys(became).flatMap((field) => {
       if (isSilent(field) || same(was[field], became[field])) return []
@@ -31,7 +27,7 @@ export function changesOf(
   const isRemoved = entry.operation === 'delete'
   const row = isRemoved ? was : became
   return Object.keys(row).flatMap((field) => {
-    if (isSilent(field) || /_(by|at)$/.test(field)) return []
+    if (isSilent(field) || /_(by|at)$|^(code|number|evidence)$/.test(field)) return []
     const value = text(field, row[field], row)
     if (value === null) return []
     return [{ field: fieldWord(field), before: isRemoved ? value : null, after: isRemoved ? null : value }]
