@@ -7,6 +7,7 @@ import { ErrorNote } from '@/components/ui/error-note'
 import { Field } from '@/components/ui/field'
 import { RadioGroup } from '@/components/ui/radio-group'
 import { TextArea } from '@/components/ui/text-area'
+import { keep } from '@/components/session/signed-out-dialog'
 import { newId } from '@/lib/db/id'
 import { ClientError, send } from '@/lib/http/fetcher'
 
@@ -57,9 +58,13 @@ export function CaseForm({ supportedMonths, initial, target, onSaved }: Props) {
         : null,
       periodAfterOpeningEvidence: draft.periodAfterOpeningMonths ? draft.periodAfterOpeningEvidence : '',
     }
+    const asked = { what: 'the proposal', text: `${draft.proposedMonths} months, ${draft.storageStatement}` }
     try {
       if ('code' in target) {
-        await send(`/api/cases/${target.code}`, 'PUT', { ...body, version: target.version })
+        await keep(
+          () => send(`/api/cases/${target.code}`, 'PUT', { ...body, version: target.version }),
+          asked,
+        )
         onSaved?.()
       } else {
         const made = await send<{ code: string }>('/api/cases', 'POST', {

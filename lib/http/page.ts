@@ -1,6 +1,7 @@
 import { headers } from 'next/headers'
 import { notFound, redirect } from 'next/navigation'
 import { connection } from 'next/server'
+import { cache } from 'react'
 import type { Actor } from '@/lib/auth/actor'
 import { may, type Permission } from '@/lib/auth/permissions'
 import { findActor } from '@/lib/auth/session'
@@ -24,9 +25,10 @@ export async function visitor(): Promise<{ actor: Actor | null; db: Db; now: str
   return { actor, db, now: new Date().toISOString() }
 }
 
-async function visit(): Promise<{ actor: Actor | null; path: string }> {
+// The layout and its page ask in the same request: the session is looked up once.
+const visit = cache(async (): Promise<{ actor: Actor | null; path: string }> => {
   // Each page renders per request: its nonce is new each time.
   await connection()
   const given = await headers()
   return { actor: await findActor(given.get('cookie'), newId()), path: given.get('x-stillstand-path') ?? '/' }
-}
+})

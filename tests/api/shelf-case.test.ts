@@ -213,9 +213,7 @@ describe('a case, step by step', () => {
         await statement(trx as typeof t.owner)
       })
     const belongs = async () => (await get(people.qa)).body.signatures[0].belongs as boolean
-    await alter(() =>
-      as((trx) => trx.updateTable('signature').set({ personName: 'Somebody Else' }).execute()),
-    )
+    await as((trx) => trx.updateTable('signature').set({ personName: 'Somebody Else' }).execute())
     expect(await belongs()).toBe(false)
     expect((await call(report, { cookie: people.qa.cookie, params: { code } })).status).toBe(409)
     await as((trx) => trx.updateTable('signature').set({ personName: 'Quinn Arbor' }).execute())
