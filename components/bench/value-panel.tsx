@@ -135,15 +135,15 @@ export function ValuePanel({
   )
 }
 
-export function FieldBand({
-  field,
-  now,
-  width,
-}: {
+type BandProps = {
   field: Slot['field']
   now: number | null
   width: number
-}) {
+  /** Without its words, where they stand beside it. */
+  isQuiet?: boolean
+}
+
+export function FieldBand({ field, now, width, isQuiet = false }: BandProps) {
   const { lower, upper } = field.band ?? { lower: null, upper: null }
   const marks = [lower, field.initial, upper].filter((v) => v !== null)
   return (
