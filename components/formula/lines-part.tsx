@@ -33,7 +33,7 @@ export function LinesPart({ formula, handle, isOpen, totals, phases, checks, bef
   const [problem, setProblem] = useState('')
   const sheet = useRef<HTMLDivElement>(null)
   const foot = <TotalRow totals={totals} beforeNumber={before ? (formula.before?.number ?? null) : null} />
-  const lines = draft.lines.length ? draft.lines : [emptyLine(`${formula.versionId}-first`, 'A', false)]
+  const lines = draft.lines.length ? draft.lines : [emptyLine(formula.versionId, 'A', false)]
   const middles = useRowMiddles(sheet, lines.map((line) => line.id).join())
   return (
     <div className="grid grid-cols-[minmax(0,1fr)] gap-x-8 gap-y-8 xl:grid-cols-[minmax(0,1fr)_572px]">

@@ -3,16 +3,25 @@ import { expect } from './watch'
 
 // What technicians do at the Bench in more than one test.
 
-type Asks = 'look, stays sealed' | 'opened once' | 'repeat on a spare'
+type Asks = 'look, stays sealed' | 'opened once'
 type Jar = {
   grossG: number
   fields: { attribute: string; last: { value: number | null }[] }[]
 }
 
-/** Opens the first jar still to be read that asks for this; gives its code. */
-export async function openJar(page: Page, asks: Asks, batch: string): Promise<string> {
-  const row = page.getByRole('button', { name: new RegExp(`^[0-9A-Z]{5} ?${batch}, .*(by|today).*${asks}`) })
-  await row.first().click()
+/** Unfolds the place of the walk. */
+export async function openStation(page: Page, celsius: string): Promise<void> {
+  const place = page.getByRole('button', { name: new RegExp(`^${celsius} ?°C.*to read$`) })
+  if ((await place.getAttribute('aria-expanded')) === 'false') await place.click()
+}
+
+/** Opens the first jar of a batch that is still to be read at a station and asks for this; gives its code. */
+export async function openJar(page: Page, station: string, batch: string, asks: Asks): Promise<string> {
+  await openStation(page, station)
+  await page
+    .getByRole('button', { name: new RegExp(`^[0-9A-Z]{5} ?${batch}, .*(by \\d|today only).*${asks}`) })
+    .first()
+    .click()
   await expect(page).toHaveURL(/\/bench\/[0-9A-Z]{5}$/)
   await expect(page.getByRole('tablist', { name: 'What is measured' })).toBeVisible()
   return codeOf(page)

@@ -10,7 +10,7 @@ test('D09: a jar that is kept without network waits in the tray and goes out onc
   watch,
 }) => {
   await openAs(page, 'jos', '/bench')
-  const code = await openJar(page, 'look, stays sealed', 'L1-1')
+  const code = await openJar(page, '5', 'L1-1', 'look, stays sealed')
   await page.getByRole('button', { name: 'Water below: 0.1 mm more' }).click()
   await page.getByRole('button', { name: 'Water below: 0.1 mm less' }).click()
   await pick(page, /^Look/)

@@ -25,7 +25,9 @@ export const test = base.extend<{ watch: Watch }>({
         // The browser tells of a breach on the console too, but not of every kind.
         await watched.addInitScript(() =>
           document.addEventListener('securitypolicyviolation', (event) =>
-            console.error(`content security policy: ${event.violatedDirective}, ${event.blockedURI}`),
+            console.error(
+              `content security policy: ${event.violatedDirective} refuses ${event.blockedURI} in ${event.sourceFile}:${event.lineNumber}:${event.columnNumber}`,
+            ),
           ),
         )
         watched.on('console', (message) => {

@@ -1,4 +1,4 @@
-import { openJar, pick, readBalance, readLast } from '../bench'
+import { openJar, openStation, pick, readBalance, readLast } from '../bench'
 import { pressIn } from '../people'
 import { photo } from '../picture'
 import { expect, test } from '../watch'
@@ -11,7 +11,7 @@ test('The story, technician: a watch jar is looked at, measured in layers, weigh
   await pressIn(page, 'mada')
   await expect(page).toHaveURL(/\/bench$/)
   await expect(page.getByRole('heading', { level: 1 })).toHaveText(/^\d+ of \d+ jars$/)
-  const code = await openJar(page, 'look, stays sealed', 'SI82-2')
+  const code = await openJar(page, '40', 'SI82-2', 'look, stays sealed')
 
   const more = page.getByRole('button', { name: 'Oil on top: 0.1 mm more' })
   await more.tap()
@@ -47,7 +47,7 @@ test('The story, technician: R08, R11: a measuring jar takes its numbers, refuse
   watch,
 }) => {
   await pressIn(page, 'mada', '/bench')
-  const code = await openJar(page, 'opened once', 'SI82-2')
+  const code = await openJar(page, '40', 'SI82-2', 'opened once')
   const typed = page.locator('#typed')
 
   await pick(page, /^pH/)
@@ -81,5 +81,6 @@ test('The story, technician: R08, R11: a measuring jar takes its numbers, refuse
   await page.goto(`/bench/${code}`)
   await expect(page.getByText(/^pH 6\.80/)).toContainText('typed 6,80 by MA; doubt: ')
   await page.getByRole('button', { name: 'Back to the walk' }).first().tap()
+  await openStation(page, '40')
   await expect(page.getByRole('button', { name: /SI82-2.*repeat on a spare/ }).first()).toBeVisible()
 })
