@@ -13,6 +13,8 @@ type Props = {
 
 /** The jar's fields in the order of the protocol; a check mark for what is in. */
 export function SlotTabs({ tabs, at, onPick, note, hasPhotos }: Props) {
+  const top = tabs.find((tab) => tab.slot.part === 'top')
+  const bottom = tabs.find((tab) => tab.slot.part === 'bottom')
   return (
     <div
       role="tablist"
