@@ -48,28 +48,29 @@ export function CellStrip({ code, note, href, attributes }: CellStripProps) {
         </p>
         <p className="text-13 text-soft">{note}</p>
       </div>
-      <dl className="grid min-w-0 flex-1 basis-80 grid-cols-[repeat(auto-fit,minmax(150px,1fr))] gap-x-7 gap-y-4">
+      <ul className="grid min-w-0 flex-1 basis-80 grid-cols-[repeat(auto-fit,minmax(150px,1fr))] gap-x-7 gap-y-4">
         {attributes.map((attribute) => (
           <Level key={attribute.key} attribute={attribute} />
         ))}
-      </dl>
+      </ul>
     </div>
   )
 }
 
 function Level({ attribute }: { attribute: StripAttribute }) {
-  const [box, width] = useWidth<HTMLDivElement>(168)
-  const { name, text, isOut, lowerText, upperText, ...bar } = attribute
+  const [box, width] = useWidth<HTMLLIElement>(168)
+  const { name, text, isOut, lowerText, upperText, lower, upper, initial, last, now } = attribute
+  const bar = { lower, upper, initial, last, now }
   const scale = bandScale({ ...bar, width })
   const edges = [
     { value: bar.lower, text: lowerText },
     { value: bar.upper, text: upperText },
   ]
   return (
-    <div ref={box} className="min-w-0">
+    <li ref={box} className="min-w-0">
       <div className="flex items-baseline justify-between gap-2 whitespace-nowrap">
-        <dt className="truncate text-13 text-soft">{name}</dt>
-        <dd className={`text-15 ${isOut ? 'font-750 text-alarm' : 'font-600'}`}>{text}</dd>
+        <span className="truncate text-13 text-soft">{name}</span>
+        <span className={`text-15 ${isOut ? 'font-750 text-alarm' : 'font-600'}`}>{text}</span>
       </div>
       <BandBar {...bar} width={width} title={bandSentence(attribute)} />
       <div className="relative h-4 text-13" aria-hidden>
@@ -85,7 +86,7 @@ function Level({ attribute }: { attribute: StripAttribute }) {
           ) : null,
         )}
       </div>
-    </div>
+    </li>
   )
 }
 

@@ -13,7 +13,8 @@ export function LabelSheet({ labels }: { labels: Label[] }) {
       {labels.map(({ jar, qr }) => (
         <li
           key={jar.id}
-          className="flex h-[37mm] break-inside-avoid items-center gap-3 overflow-hidden border-r border-b border-hair bg-white px-3 text-black print:border-hair"
+          className="flex h-[37mm] break-inside-avoid items-center gap-3 overflow-hidden border-r border-b border-hair px-3 print:border-hair"
+          style={paper}
         >
           <svg
             viewBox={`-2 -2 ${qr.size + 4} ${qr.size + 4}`}
@@ -40,6 +41,9 @@ export function LabelSheet({ labels }: { labels: Label[] }) {
     </ol>
   )
 }
+
+/** A label is paper in either theme: a scanner wants black on white. */
+const paper = { background: '#fff', color: '#000' }
 
 const kindWords: Record<string, string> = {
   watch: 'watch, stays sealed',

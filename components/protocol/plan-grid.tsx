@@ -19,7 +19,7 @@ export function PlanGrid({ plan, onToggle }: Props) {
   const weeks = weeksOfPlan(plan)
   if (plan.stations.length === 0) return <p className="text-soft">No station yet.</p>
   return (
-    <div className="overflow-x-auto">
+    <div className="relative overflow-x-auto" role="region" aria-label="Plan" tabIndex={0}>
       <table className="border-collapse text-15">
         <caption className="sr-only">Stations by time points</caption>
         <thead>

@@ -30,7 +30,7 @@ export function ProtocolList({ protocols, mayWrite }: { protocols: ProtocolRow[]
               <b>{capital(counted(protocols.length, 'protocol'))}</b>
               {running === 0
                 ? ', none followed yet'
-                : `, ${numberWord(running)} followed by ${running === 1 ? 'a study' : 'studies'}`}
+                : `, ${running === protocols.length ? 'all' : numberWord(running)} followed by ${running === 1 ? 'a study' : 'studies'}`}
             </>
           )
         }

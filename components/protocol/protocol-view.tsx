@@ -14,7 +14,7 @@ import { send } from '@/lib/http/fetcher'
 import type { ProtocolPage } from '@/lib/protocol/queries'
 import { jarsOfPlan, missingInPlan, weeksOfPlan } from '@/lib/protocol/rules/plan'
 import { protocolKeys, type ProtocolPlan } from '@/lib/protocol/schema'
-import { counted } from '@/lib/study/rules/words'
+import { capital, counted } from '@/lib/study/rules/words'
 import { AttributeList } from './attribute-list'
 import { PlanEditor } from './plan-editor'
 import { PlanGrid } from './plan-grid'
@@ -138,10 +138,7 @@ function Headline({ plan, name }: { plan: ProtocolPlan; name: string }) {
 function takes(plan: ProtocolPlan): string {
   const { grams } = jarsOfPlan(plan, 1)
   const weeks = weeksOfPlan(plan)
-  return `They take ${Math.ceil(grams)} g with ${plan.lossPercent} % loss. ${counted(plan.stations.length, 'station')}, ${counted(weeks.length, 'time point')} from week ${weeks[0]} to week ${weeks.at(-1)}.`.replace(
-    /\. ([a-z])/,
-    (_, letter: string) => `. ${letter.toUpperCase()}`,
-  )
+  return `They take ${Math.ceil(grams)} g with ${plan.lossPercent} % loss. ${capital(counted(plan.stations.length, 'station'))}, ${counted(weeks.length, 'time point')} from week ${weeks[0]} to week ${weeks.at(-1)}.`
 }
 
 function jarWords(plan: ProtocolPlan): string {
@@ -149,5 +146,5 @@ function jarWords(plan: ProtocolPlan): string {
     plan.restHours === 0
       ? 'A measuring jar is read at once'
       : `A measuring jar rests ${plan.restHours} h closed before it is read`
-  return `${plan.fillG} g in each jar, filled ${plan.fillHeightMm} mm high. ${plan.pack || 'No pack is named'}. ${plan.initialJars} for the initial, ${plan.retains} retained. ${rest}.`
+  return `${plan.fillG} g in each jar, filled ${plan.fillHeightMm} mm high. ${capital(plan.pack || 'no pack is named')}. ${plan.initialJars} for the initial, ${plan.retains} retained. ${rest}.`
 }

@@ -25,7 +25,9 @@ export function PhotoStrip({ code, batch, photos, stations, picked, scale }: Pro
     withPhotos.find((one) => one.id === picked) ??
     withPhotos.toSorted((a, b) => countAt(photos, b.id) - countAt(photos, a.id))[0]
   if (!station) return null
-  const shown = newestOfEach(photos.filter((photo) => photo.studyStationId === station.id))
+  const shown = apart(newestOfEach(photos.filter((photo) => photo.studyStationId === station.id)), (photo) =>
+    scale.x(photo.timeWeeks ?? 0),
+  )
   return (
     <section aria-label={`Photos at ${nameOf(station)}`} className="relative" style={{ height: height + 12 }}>
       <div className="absolute top-6 left-0 hidden sm:block">
@@ -85,4 +87,14 @@ function countAt(photos: Props['photos'], stationId: string): number {
 /** One photo a pull: the one taken last. */
 function newestOfEach(photos: Props['photos']): Props['photos'] {
   return [...new Map(photos.map((photo) => [photo.timeWeeks ?? photo.id, photo])).values()]
+}
+
+/** Where weeks lie closer than a photo is wide, those in between are left out; the newest one stays. */
+function apart<T>(photos: T[], x: (photo: T) => number): T[] {
+  const kept: T[] = []
+  for (const photo of photos.toReversed()) {
+    const before = kept.at(-1)
+    if (before === undefined || x(before) - x(photo) >= width + 2) kept.push(photo)
+  }
+  return kept.toReversed()
 }

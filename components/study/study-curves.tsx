@@ -1,6 +1,7 @@
 'use client'
 
 import useSWR from 'swr'
+import type { CurveInput } from '@/components/charts/curve-data'
 import { Curves } from '@/components/charts/curves'
 import { Empty } from '@/components/ui/empty'
 import { LinkButton } from '@/components/ui/link-button'
@@ -45,6 +46,7 @@ export function StudyCurves({ code, rights, batch, station }: Props) {
         ) : (
           <Curves
             plots={plots}
+            heights={plots.map(heightOf)}
             startOn={study.startedOn}
             endWeeks={study.endWeeks}
             todayWeeks={page.todayWeeks}
@@ -67,4 +69,10 @@ export function StudyCurves({ code, rights, batch, station }: Props) {
       </div>
     </>
   )
+}
+
+/** As high as the words and keys at its left need: title, small print, a line for each station, the table's link. */
+function heightOf({ title, unit, series }: CurveInput, index: number): number {
+  const needed = (title.length > 10 ? 66 : 36) + unit.length * 21 + series.length * 30 + 46
+  return Math.max(index === 0 ? 266 : 224, needed)
 }

@@ -14,7 +14,7 @@ import { namedJar } from '@/lib/jar/rules'
 import type { StudyJars as Page } from '@/lib/study/queries/jars'
 import { spokenDay } from '@/lib/study/rules/calendar'
 import { degrees } from '@/lib/study/rules/finding'
-import { counted, listed } from '@/lib/study/rules/words'
+import { capital, counted, listed } from '@/lib/study/rules/words'
 import { studyKeys } from '@/lib/study/schema'
 import { StudyHeading, type StudyRights } from './study-heading'
 
@@ -44,7 +44,7 @@ export function StudyJars({ code, rights, mayLog }: { code: string; rights: Stud
       />
       <div className="mt-6 grid gap-8">
         {stationsOf(page.jars).map(({ key, name, jars }) => (
-          <Section key={key} title={name} sentence={counted(jars.length, 'jar')}>
+          <Section key={key} title={name} sentence={capital(counted(jars.length, 'jar'))}>
             <Ledger
               caption={`Jars at ${name}`}
               columns={columns(mayLog ? setWeighed : null)}
@@ -134,7 +134,7 @@ function kindsSentence(jars: JarRow[]): string {
     return count === 0 ? [] : [counted(count, word)]
   })
   const text = listed(kinds)
-  return `${text.charAt(0).toUpperCase()}${text.slice(1)}. A watch jar stays sealed to the end, a measuring jar is opened once.`
+  return `${capital(text)}. A watch jar stays sealed to the end, a measuring jar is opened once.`
 }
 
 function stationsOf(jars: JarRow[]) {

@@ -122,7 +122,7 @@ function columnsFor(filter: StudyFilter): LedgerColumn<LedgerRow>[] {
         <Link
           data-study
           href={`/studies/${encodeURIComponent(row.code)}`}
-          className="font-600 underline-offset-4 hover:underline"
+          className="font-600 whitespace-nowrap underline-offset-4 hover:underline"
         >
           {row.code}
         </Link>
@@ -132,7 +132,7 @@ function columnsFor(filter: StudyFilter): LedgerColumn<LedgerRow>[] {
       key: 'batch',
       title: 'batch and formula',
       cell: (row) => (
-        <span className="block max-w-[270px] truncate" title={row.title}>
+        <span className="block max-w-[118px] truncate sm:max-w-[230px]" title={row.title}>
           <b className="font-650">{batchNames(row.batches)}</b> {row.formulaName}
         </span>
       ),
@@ -142,7 +142,7 @@ function columnsFor(filter: StudyFilter): LedgerColumn<LedgerRow>[] {
       key: 'shelf',
       title: 'worst shelf, each to its own time',
       from: 'desk',
-      width: '440px',
+
       cell: (row) => <WorstShelf row={row} />,
     },
     {
@@ -163,7 +163,9 @@ function columnsFor(filter: StudyFilter): LedgerColumn<LedgerRow>[] {
       key: 'who',
       title: 'who is next',
       from: 'tablet',
-      cell: (row) => <span className={row.isMine ? 'font-700' : ''}>{row.whoIsNext}</span>,
+      cell: (row) => (
+        <span className={`whitespace-nowrap ${row.isMine ? 'font-700' : ''}`}>{row.whoIsNext}</span>
+      ),
     },
   ]
 }

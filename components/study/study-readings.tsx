@@ -60,7 +60,7 @@ export function StudyReadings({ code, rights, timeZone, personId, mayLog }: Prop
       {shown.length === 0 ? (
         <Empty title="Nothing was read yet" sentence="Readings appear here as they are taken at the Bench." />
       ) : (
-        <div className="mt-2 overflow-x-auto">
+        <div className="relative mt-2 overflow-x-auto" role="region" aria-label="Readings" tabIndex={0}>
           <table className="w-full border-collapse text-15">
             <caption className="sr-only">Readings of {code}, in the order they were recorded</caption>
             <thead>
@@ -71,7 +71,9 @@ export function StudyReadings({ code, rights, timeZone, personId, mayLog }: Prop
                 <th scope="col" className="text-right">
                   value
                 </th>
-                <th scope="col">as typed</th>
+                <th scope="col" className="pl-6!">
+                  as typed
+                </th>
                 <th scope="col">read by</th>
                 <th scope="col">measured</th>
                 <th scope="col">
@@ -127,7 +129,7 @@ function Chain({ chain, timeZone, acts }: { chain: ReadingChain; timeZone: strin
           </span>
           {isCurrent && chain.entries.length > 1 ? <span className="sr-only"> counts now</span> : null}
         </td>
-        <td className="max-w-[260px]">
+        <td className="max-w-[260px] pl-6!">
           <span className={old}>{entry.typed}</span>
           {entry.reason ? <span className="block text-13 text-soft">because: {entry.reason}</span> : null}
           {entry.doubts.map((doubt) => (

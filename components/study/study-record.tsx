@@ -36,7 +36,7 @@ export function StudyRecord({ study, batches, rights, trail, timeZone }: Props) 
           sentence="You see your own entries; QA and the manager see all of them."
         />
       ) : (
-        <div className="mt-5 overflow-x-auto">
+        <div className="relative mt-5 overflow-x-auto" role="region" aria-label="Entries" tabIndex={0}>
           <table className="w-full border-collapse text-15">
             <caption className="sr-only">Record of {study.code}</caption>
             <thead>

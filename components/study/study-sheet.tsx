@@ -87,7 +87,7 @@ function Strip({ sheet, shelf, weeks }: { sheet: SheetPage; shelf: SheetShelf; w
     ...(cell.readBy ? [`read by ${cell.readBy}`] : cell.state === 'read' ? [] : [cell.state]),
   ].join(', ')
   return (
-    <div className="sticky bottom-0 z-10 mt-6">
+    <div className="mt-6 lg:sticky lg:bottom-0 lg:z-10">
       <CellStrip
         code={cell.code ? namedJar(cell.code, shelf.station) : 'initial'}
         note={note}

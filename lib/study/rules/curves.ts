@@ -18,16 +18,20 @@ type Station = { id: string; kind: string; temperatureC: number | null }
 
 /** What the curves say that the sheet does not: the day on which a trend leaves its band, and how sure that is. */
 export function curvesFinding(input: {
-  study: { startedOn: string }
+  study: { startedOn: string; today: string }
   stations: Station[]
   batches: { id: string }[]
   series: Series[]
 }): { headline: Phrase[]; sentence: string } {
-  const { study, series } = input
+  const { study } = input
+  // Words against the initial have no curve.
+  const series = input.series.filter(({ attribute }) => attribute !== 'look' && attribute !== 'odour')
   const day = (weeks: number, withYear = true) =>
     spokenDay(addDays(study.startedOn, Math.round(weeks * 7)), withYear)
   const leaning = series
     .filter((one) => one.standing === 'leaning' && one.leavesAtWeeks !== null)
+    // A forecast that has passed says nothing any more: the readings since then do.
+    .filter((one) => addDays(study.startedOn, Math.round(one.leavesAtWeeks! * 7)) >= study.today)
     .toSorted((a, b) => a.leavesAtWeeks! - b.leavesAtWeeks!)
   const out = series
     .filter((one) => one.standing === 'out')

@@ -178,14 +178,14 @@ function headline(total: number, out: number, leaning: number, filter: StudyFilt
     const rest = leaning > 0 ? `, ${numberWord(leaning)} ${leaning === 1 ? 'is' : 'are'} leaning` : ''
     if (total === 1) return ['The one study', ` ${filter.is === 'closed' ? 'that ended ' : ''}is out`]
     return [
-      `${capital(numberWord(out))} of ${total}`,
+      `${capital(numberWord(out))} of ${numberWord(total)}`,
       ` ${kind}${studies} ${out === 1 ? 'is' : 'are'} out${rest}`,
     ]
   }
   if (leaning > 0) {
     if (total === 1) return ['The one study', ' is leaning']
     return [
-      `${capital(numberWord(leaning))} of ${total}`,
+      `${capital(numberWord(leaning))} of ${numberWord(total)}`,
       ` ${kind}${studies} ${leaning === 1 ? 'is' : 'are'} leaning, none is out`,
     ]
   }
