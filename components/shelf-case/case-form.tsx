@@ -7,7 +7,7 @@ import { ErrorNote } from '@/components/ui/error-note'
 import { Field } from '@/components/ui/field'
 import { RadioGroup } from '@/components/ui/radio-group'
 import { TextArea } from '@/components/ui/text-area'
-import { keep } from '@/components/session/signed-out-dialog'
+import { keep } from '@/components/session/keep'
 import { newId } from '@/lib/db/id'
 import { ClientError, send } from '@/lib/http/fetcher'
 
