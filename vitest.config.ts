@@ -12,7 +12,11 @@ export default defineConfig({
         resolve: { alias },
         test: {
           name: 'unit',
-          include: ['tests/science/**/*.test.ts', 'tests/rules/**/*.test.ts', 'tests/unit/**/*.test.{ts,tsx}'],
+          include: [
+            'tests/science/**/*.test.ts',
+            'tests/rules/**/*.test.ts',
+            'tests/unit/**/*.test.{ts,tsx}',
+          ],
         },
       },
       {
