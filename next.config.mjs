@@ -7,6 +7,7 @@ const config = {
   typescript: { ignoreBuildErrors: true },
   // Writing it costs more than the next build saves.
   experimental: { turbopackFileSystemCacheForBuild: false },
+  turbopack: { resolveAlias: { '@stdlib/assert-has-generator-support': './lib/science/has-generators.cjs' } },
   allowedDevOrigins: ['127.0.0.1'],
   // Native or file-reading packages stay outside the bundle.
   serverExternalPackages: [
