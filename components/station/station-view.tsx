@@ -35,7 +35,7 @@ export function StationView({ station, record, timeZone, mayWrite, mayLog }: Pro
             <Link href="/stations">Stations</Link>, {station.name}, {limitsText(station)}
           </>
         }
-        headline={<Headline record={record} name={station.name} />}
+        headline={<Headline record={record} name={capital(station.name)} />}
         sentence={recordSentence(record)}
         acts={
           <>

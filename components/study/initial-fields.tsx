@@ -61,7 +61,7 @@ export function InitialFields({ offer, draft, plan, set, fields }: Props) {
                   return (
                     <NumberField
                       key={place}
-                      label={`${batch.code}${planned.replicates > 1 ? `, replicate ${place + 1}` : ''}`}
+                      label={`${attributeOf(planned.attribute).label} of ${batch.code}${planned.replicates > 1 ? `, replicate ${place + 1}` : ''}`}
                       value={texts[place] ?? ''}
                       unit={planned.viscosity && draft.isTorque ? '%' : attributeOf(planned.attribute).unit}
                       onText={(text) =>
