@@ -163,8 +163,9 @@ async function trail(db: Kysely<any>): Promise<void> {
       insert into trail_exemption values (table_name, why)
     $$;
 
+    -- UTC, because a session's zone would show in the text of instants.
     create function write_trail() returns trigger language plpgsql
-      security definer set search_path = pg_catalog, public, pg_temp as $$
+      security definer set search_path = pg_catalog, public, pg_temp set timezone = 'UTC' as $$
     declare
       was jsonb := case when tg_op <> 'INSERT' then to_jsonb(old) end;
       became jsonb := case when tg_op <> 'DELETE' then to_jsonb(new) end;
@@ -276,9 +277,6 @@ async function seal(db: Kysely<any>): Promise<void> {
 
 async function system(db: Kysely<any>): Promise<void> {
   await sql`
-    insert into person (id, email, name, initials, is_system)
-      values ('00000000-0000-7000-8000-000000000001', 'system@stillstand.invalid', 'Stillstand', 'ST', true);
-
     select trail_exempt('session', 'who came and went is on the trail as events'),
       trail_exempt('password', 'a hash has no place in a record that people read; its change is an event'),
       trail_exempt('token', 'hashed one-time links; their use is an event'),
@@ -301,5 +299,10 @@ async function system(db: Kysely<any>): Promise<void> {
       grant_app('rate_limit', 'select, insert, update, delete'),
       grant_app('trail', 'select'), grant_app('trail_seal', 'select'), grant_app('trail_exemption', 'select'),
       grant_app('kysely_migration', 'select');
+
+    -- Its own first trail row names itself.
+    select set_config('app.actor_id', '00000000-0000-7000-8000-000000000001', true);
+    insert into person (id, email, name, initials, is_system)
+      values ('00000000-0000-7000-8000-000000000001', 'system@stillstand.invalid', 'Stillstand', 'ST', true);
   `.execute(db)
 }
