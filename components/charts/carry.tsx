@@ -24,7 +24,7 @@ export function Carry(input: CarryInput) {
       </svg>
       <figcaption className="flex flex-wrap justify-between gap-x-6 pt-1 text-13 text-soft">
         <span>a dot is a reading; a cross, a missing one</span>
-        <span>Dashed: carried by the line. Past the red step its 95 % bound is outside.</span>
+        <span>Dashed: carried by the line. Past the red step nothing carries it.</span>
       </figcaption>
     </figure>
   )

@@ -65,7 +65,7 @@ export function TimeRuler({ scale, startOn, points, todayWeeks, width, caption }
         {caption ?? unit}
       </text>
       {shownToday === null ? null : (
-        <TodayTag x={scale.x(shownToday)} startOn={startOn} weeks={shownToday} unit={unit} />
+        <TodayTag x={scale.x(shownToday)} width={width} startOn={startOn} weeks={shownToday} unit={unit} />
       )}
     </svg>
   )
@@ -73,24 +73,42 @@ export function TimeRuler({ scale, startOn, points, todayWeeks, width, caption }
 
 function TodayTag({
   x,
+  width,
   startOn,
   weeks,
   unit,
 }: {
   x: number
+  width: number
   startOn: string
   weeks: number
   unit: 'week' | 'month'
 }) {
+  // On a study's last day the tag steps aside, and its point still stands on the day.
+  const middle = Math.min(x, width - 48)
   return (
     <g>
       <path d={`M${x} 44V${RULER_HEIGHT}`} stroke="var(--ink)" strokeWidth={1.25} />
-      <rect x={x - 47} y={0} width={94} height={46} rx={3} fill="var(--ink)" />
+      <rect x={middle - 47} y={0} width={94} height={46} rx={3} fill="var(--ink)" />
       <path d={`M${x - 6} 45h12l-6 8z`} fill="var(--ink)" />
-      <text x={x} y={18} fontSize={13} fontWeight={500} textAnchor="middle" style={{ fill: 'var(--onink)' }}>
+      <text
+        x={middle}
+        y={18}
+        fontSize={13}
+        fontWeight={500}
+        textAnchor="middle"
+        style={{ fill: 'var(--onink)' }}
+      >
         today, {dayName(dayAfter(startOn, weeks))}
       </text>
-      <text x={x} y={37} fontSize={17} fontWeight={700} textAnchor="middle" style={{ fill: 'var(--onink)' }}>
+      <text
+        x={middle}
+        y={37}
+        fontSize={17}
+        fontWeight={700}
+        textAnchor="middle"
+        style={{ fill: 'var(--onink)' }}
+      >
         {timeLabel(weeks, unit)}
       </text>
     </g>

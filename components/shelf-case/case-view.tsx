@@ -36,7 +36,12 @@ export function CaseView({ code, draft, mayPutForward, maySign, whyNotSign, demo
   if (!content) return null
   const months = data.proposedMonths ?? 0
   const limiting = content.attributes.find((a) => a.attribute === content.limitingAttribute)
-  const plotted = limiting?.calc ? limiting : content.attributes.find((a) => a.calc)
+  // The one that limits, else the one that moves the most to the eye: viscosity.
+  const plotted = [
+    limiting,
+    content.attributes.find((a) => a.attribute === 'viscosity'),
+    ...content.attributes,
+  ].find((a) => a?.calc)
   const { lead, rest, sentence } = caseHeadline(data, content)
   return (
     <>

@@ -22,7 +22,7 @@ export function RegressionPlot({
   const isPercent = view.unit.startsWith('%')
   const label = (y: number) =>
     isPercent
-      ? y.toFixed(0)
+      ? y.toFixed(0).replace('-', '\u2212')
       : evidence.attribute === 'viscosity'
         ? grouped(String(Number(y.toPrecision(3))))
         : figure(evidence.attribute, y)

@@ -20,7 +20,11 @@ export function RestsOn({ content, whyFewer, months, kind, detail }: Props) {
         <b>{counted}</b> of {content.readings.length} count
       </>,
     ],
-    ['Batches', content.batches.map((b) => `${b.code} (${b.formula})`).join('; ')],
+    [
+      'Batches',
+      content.batches.map((b) => b.code).join(', ') +
+        `: ${[...new Set(content.batches.map((b) => b.formula))].join('; ')}`,
+    ],
     ...(accelerated.length > 0
       ? ([
           [
@@ -35,7 +39,13 @@ export function RestsOn({ content, whyFewer, months, kind, detail }: Props) {
     [
       content.station.name,
       record
-        ? `mean kinetic ${record.calc.output.mktC.toFixed(1)} °C, ${record.excursions.length === 0 ? 'never outside its limits' : `${record.excursions.length} excursions`}`
+        ? `mean kinetic ${record.calc.output.mktC.toFixed(1)} °C, ${
+            record.excursions.length === 0
+              ? 'never outside its limits'
+              : record.excursions.length === 1
+                ? 'one excursion'
+                : `${record.excursions.length} excursions`
+          }`
         : 'no temperatures on record',
     ],
     ...(content.cap

@@ -91,10 +91,10 @@ async function fill(open: Omit<Filling, 'people'>): Promise<void> {
     isShared: false,
   })
   const apart = await tell({
-    title: 'Silicone-free cream N86, screen',
+    title: 'Silicone-free cream N86, half a year',
     formula: 'N86',
     batches: await batchesOf('N86', 1, 4000, 88),
-    protocol: protocols['screen stiff'],
+    protocol: protocols['half year stiff'],
     startedDaysAgo: 84,
     untilDaysAgo: 0,
     today: (jar) => jar.temperatureC === 5 || (jar.temperatureC === 25 && jar.asks === 'watch'),

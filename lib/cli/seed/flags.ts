@@ -7,7 +7,7 @@ import { daysAgo, type Filling } from './context'
 export async function answerFlags(filling: Filling): Promise<void> {
   const { liv, rune } = filling.people
   const open = (await listFlags(filling.db, liv, { state: 'open' })).toSorted((a, b) => a.number - b.number)
-  const recent = daysAgo(filling, 30)
+  const recent = daysAgo(filling, 16)
   for (const flag of open) {
     const raised = new Date(flag.raisedAt)
     if (raised > recent) continue

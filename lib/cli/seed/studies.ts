@@ -14,7 +14,7 @@ import { behaviours } from './truth'
 import { walkStudy, type StudyToWalk } from './walk'
 
 export type Protocols = Record<
-  'screen cream' | 'screen stiff' | 'screen lotion' | 'half year' | 'two years' | 'three years',
+  'screen cream' | 'screen lotion' | 'half year' | 'half year stiff' | 'two years' | 'three years',
   { id: string; plan: ProtocolPlan }
 >
 
@@ -30,13 +30,6 @@ export async function fillProtocols(filling: Filling): Promise<Protocols> {
     )
     return { id: versionId, plan }
   }
-  const halfYear = readyMadePlan('screen', 'cream')
-  const weeks = [1, 2, 3, 4, 6, 8, 10, 12, 16, 20, 26]
-  // A repeat takes a spare each time a rule asks for one; a cream that comes apart asks often.
-  const withSpares = (plan: ProtocolPlan): ProtocolPlan => ({
-    ...plan,
-    stations: plan.stations.map((s) => ({ ...s, spares: 5 })),
-  })
   const long = readyMadePlan('long-term', 'lotion')
   const longStations = (last: number) =>
     long.stations
@@ -47,18 +40,9 @@ export async function fillProtocols(filling: Filling): Promise<Protocols> {
       }))
   return {
     'screen cream': await make('Prototype screen, cream', readyMadePlan('screen', 'cream')),
-    'screen stiff': await make(
-      'Prototype screen, stiff cream',
-      withSpares(readyMadePlan('screen', 'stiff cream')),
-    ),
     'screen lotion': await make('Prototype screen, lotion', readyMadePlan('screen', 'lotion')),
-    'half year': await make('Half a year, cream', {
-      ...withSpares(halfYear),
-      endWeeks: 26,
-      stations: withSpares(halfYear).stations.map((s) =>
-        s.kind === 'freeze-thaw' ? s : { ...s, timePoints: weeks },
-      ),
-    }),
+    'half year': await make('Half a year, cream', halfYear('cream')),
+    'half year stiff': await make('Half a year, stiff cream', halfYear('stiff cream')),
     'two years': await make('Long-term, lotion, 24 months', {
       ...long,
       endWeeks: 104,
@@ -207,5 +191,20 @@ async function logCycles(filling: Filling, studyId: string, startedDaysAgo: numb
       await logCycleStep(trx, mada, half('cold', 4, 2), now)
       await logCycleStep(trx, mada, half('warm', 2, 0), now)
     })
+  }
+}
+
+/** A screen that goes on to week 26. A repeat takes a spare each time a rule asks for one: a cream that comes apart asks often. */
+function halfYear(emulsion: 'cream' | 'stiff cream'): ProtocolPlan {
+  const screen = readyMadePlan('screen', emulsion)
+  const weeks = [1, 2, 3, 4, 5, 6, 8, 10, 12, 16, 20, 26]
+  return {
+    ...screen,
+    endWeeks: 26,
+    stations: screen.stations.map((s) => ({
+      ...s,
+      spares: 6,
+      timePoints: s.kind === 'freeze-thaw' ? s.timePoints : weeks,
+    })),
   }
 }

@@ -14,6 +14,7 @@ const sheetWidth = 511
 export function firstCurve(content: CaseContent): AttributeEvidence | undefined {
   return (
     content.attributes.find((a) => a.calc && a.attribute === content.limitingAttribute) ??
+    content.attributes.find((a) => a.calc && a.attribute === 'viscosity') ??
     content.attributes.find((a) => a.calc)
   )
 }

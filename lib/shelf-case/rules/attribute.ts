@@ -143,9 +143,12 @@ function regressionInput(
 
 function limitText(planned: PlannedAttribute, unit: string): string {
   const t = planned.tolerance
-  const withUnit = (n: number) => (unit ? `${n} ${unit}` : `${n}`)
+  const words = attributeOf(planned.attribute).words
+  if (words && t.kind === 'range' && t.upper !== undefined) return `at most ${words[t.upper] ?? t.upper}`
+  const signed = (n: number) => String(n).replace('-', '\u2212')
+  const withUnit = (n: number) => (unit ? `${signed(n)} ${unit}` : signed(n))
   if (t.kind === 'range') {
-    if (t.lower !== undefined && t.upper !== undefined) return `${t.lower} to ${withUnit(t.upper)}`
+    if (t.lower !== undefined && t.upper !== undefined) return `${signed(t.lower)} to ${withUnit(t.upper)}`
     return t.lower !== undefined ? `at least ${withUnit(t.lower)}` : `at most ${withUnit(t.upper ?? 0)}`
   }
   const of =

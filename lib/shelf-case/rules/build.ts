@@ -82,6 +82,8 @@ export function computeCase(
     .map((planned) => ({ planned, series: batchSeries(planned.attribute) }))
     .filter(({ series }) => series.length > 0)
     .map(({ planned, series }) => attributeEvidence(planned, series, cap.output.capMonths))
+    // What statistics carry first, then what was only seen to pass.
+    .toSorted((a, b) => Number(b.basis === 'regression') - Number(a.basis === 'regression'))
   const limiting = attributes.reduce<AttributeEvidence | null>(
     (least, a) => (least === null || a.supportedMonths < least.supportedMonths ? a : least),
     null,

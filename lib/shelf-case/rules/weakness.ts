@@ -26,8 +26,9 @@ export function weaknesses(from: {
         by: null,
       })
   }
+  const least = Math.min(...from.attributes.map((a) => a.supportedMonths))
   const beyond = from.attributes.filter((a) => a.supportedMonths > from.dataMonths)
-  if (beyond.length > 0)
+  if (from.attributes.length > 0 && least > from.dataMonths)
     stands.push({
       state: 'stands',
       title: 'Some months may lie past the data',
@@ -51,8 +52,8 @@ export function weaknesses(from: {
   for (const x of from.record?.excursions ?? [])
     stands.push({
       state: 'stands',
-      title: `${from.station.name} left its limits`,
-      text: `${Math.round(x.hours)} h from ${x.from.slice(0, 10)}, ${x.worstC.toFixed(1)} °C at the worst. Mean kinetic temperature does not excuse it.`,
+      title: `${capital(from.station.name)} left its limits`,
+      text: `${Math.round(x.hours)} h from ${dayText(x.from)}, ${x.worstC.toFixed(1)} °C at the worst. Mean kinetic temperature does not excuse it.`,
       by: null,
     })
   for (const f of from.evidence.flags.filter((f) => f.state === 'open'))
@@ -63,7 +64,7 @@ export function weaknesses(from: {
       state: 'answered',
       title: `Flag ${f.number}`,
       text: [f.sentence, f.why].filter(Boolean).join(' '),
-      by: f.answeredBy && f.answeredAt ? `${f.answeredBy}, ${f.answeredAt.slice(0, 10)}` : null,
+      by: f.answeredBy && f.answeredAt ? `${f.answeredBy}, ${dayText(f.answeredAt)}` : null,
     }))
   const missing = from.missing.map((m): Weakness => ({
     state: 'missing',
@@ -72,4 +73,8 @@ export function weaknesses(from: {
     by: null,
   }))
   return [...stands, ...answered, ...missing]
+}
+
+function capital(text: string): string {
+  return text.charAt(0).toUpperCase() + text.slice(1)
 }

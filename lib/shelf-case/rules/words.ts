@@ -36,7 +36,7 @@ export function caseHeadline(
   return {
     lead: `${months} ${months === 1 ? 'month' : 'months'}`,
     rest: `${months === 1 ? 'is' : 'are'} ${acts[facts.state] ?? facts.state}${carries}`,
-    sentence: `${capital(facts.storageStatement)}.${decides} ${count(stand, 'doubt stands', 'doubts stand')}, ${count(answered, 'is answered', 'are answered').toLowerCase()}.`,
+    sentence: `${capital(facts.storageStatement)}.${decides} ${count(stand, 'doubt stands', 'doubts stand')}, ${answered === 0 ? 'none is answered' : count(answered, 'is answered', 'are answered').toLowerCase()}.`,
   }
 }
 
