@@ -1,3 +1,4 @@
+import { dayText } from '@/lib/report/rules'
 import type {
   AttributeEvidence,
   CaseContent,
