@@ -1,3 +1,4 @@
+import { sql, type SqlBool } from 'kysely'
 import { z } from '@/lib/http/zod'
 import { env } from '@/lib/env'
 import { job } from '@/lib/jobs/job'
@@ -39,7 +40,7 @@ export const jobs = [
       .where('p.isSystem', '=', false)
       .where((eb) =>
         event === 'put forward'
-          ? eb('p.roles', '@>', ['qa'])
+          ? sql<SqlBool>`'qa' = any (p.roles)`
           : eb.or([
               eb('p.id', '=', found.putForwardById),
               eb.exists(
