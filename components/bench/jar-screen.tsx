@@ -1,6 +1,6 @@
 'use client'
 
-import { useEffect, useMemo, useState } from 'react'
+import { useEffect, useMemo, useRef, useState } from 'react'
 import useSWR from 'swr'
 import { AskAgain, TwoPeople, type AlreadyRead } from '@/components/bench/answers'
 import type { BenchPerson } from '@/components/bench/bench-app'
@@ -77,6 +77,7 @@ function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }: OpenP
   const [twice, setTwice] = useState<AlreadyRead | null>(null)
   const [isMissing, setMissing] = useState(false)
   const [isBusy, setBusy] = useState(false)
+  const opening = useRef<Promise<number> | null>(null)
   const entries = useMemo(
     () => entriesOf(slots, draft, jar.fillHeightMm, (s) => dayInstrument(jar, s)),
     [slots, draft, jar],
@@ -98,9 +99,14 @@ function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }: OpenP
   useEffect(() => {
     // Others see who has it open. Without network, or with the jar in other hands, one may still go on.
     if (mayType && jar.state === 'due' && !jar.openedBy)
-      void send(pullKeys.open(jar.pullJarId), 'POST', { version: jar.version }).then(
-        onChange,
-        () => undefined,
+      opening.current = send<{ version: number }>(pullKeys.open(jar.pullJarId), 'POST', {
+        version: jar.version,
+      }).then(
+        (opened) => {
+          onChange()
+          return opened.version
+        },
+        () => jar.version,
       )
     // Once per jar: the key of this component is the jar and its version.
     // eslint-disable-next-line react-hooks/exhaustive-deps
@@ -122,8 +128,11 @@ function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }: OpenP
     const sending = { ...filled, confirmed }
     setDraft(() => sending)
     const readings = entriesOf(slots, sending, jar.fillHeightMm, (s) => dayInstrument(jar, s))
+    setBusy(true)
+    // Opening counts as a change of the jar; the jar as it is shown may still be the one before.
+    const opened = (await opening.current) ?? jar.version
     const body = {
-      version: extra.version ?? jar.version,
+      version: extra.version ?? Math.max(jar.version, opened),
       claimedAt: new Date().toISOString(),
       deviceNow: new Date().toISOString(),
       note: sending.note,
@@ -131,7 +140,6 @@ function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }: OpenP
       leaveOut: extra.leaveOut ?? [],
       ...(extra.resolution ? { resolution: extra.resolution } : {}),
     }
-    setBusy(true)
     setError(null)
     try {
       await send(pullKeys.readings(jar.pullJarId), 'POST', body)

@@ -44,7 +44,7 @@ test('By keyboard alone: sign in, open a study from the ledger, walk its sheet, 
   await page.keyboard.press('ArrowRight')
   await expect(focused).toHaveAccessibleName(/, week 1 /)
   const station = (await focused.getAttribute('aria-label'))!.split(',')[0]!
-  await page.keyboard.press('ArrowUp')
+  await page.keyboard.press('ArrowDown')
   await expect(focused).not.toHaveAccessibleName(new RegExp(`^${station},`))
   await expect(focused).toHaveAccessibleName(/, week 1 /)
   await page.keyboard.press('Enter')

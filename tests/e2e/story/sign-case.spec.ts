@@ -28,7 +28,9 @@ test('The story, QA: S01, S03: signs the case that waits with the password and a
   await sign.click()
   const signature = page.getByRole('region', { name: 'Signature' })
   await expect(signature.getByRole('heading', { name: 'Approved' })).toBeVisible()
-  await expect(signature).toContainText(/Rune Tarrow, \d+ [A-Z][a-z]+ \d{4}.*UTC[+\u2212-]\d/)
+  await expect(signature).toContainText(
+    /Rune Tarrow, \d+ [A-Z][a-z]{2} \d{4}, \d\d:\d\d:\d\d [+\u2212-]\d\d:\d\d/,
+  )
   await expect(form).toHaveCount(0)
 
   const report = await signature.getByRole('link', { name: 'Open the report' }).getAttribute('href')
