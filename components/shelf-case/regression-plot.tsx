@@ -32,7 +32,12 @@ export function RegressionPlot({
       <h2 className="text-20 font-650">
         {evidence.label} <span className="text-15 font-430 text-soft">{view.unit}, by month</span>
       </h2>
-      <div className="mt-2 overflow-x-auto">
+      <div
+        className="mt-2 overflow-x-auto"
+        role="region"
+        aria-label={`${evidence.label} by month`}
+        tabIndex={0}
+      >
         <Figure
           shapes={regressionKeyShapes(
             view.batches.map((b) => b.name),
