@@ -152,9 +152,7 @@ function fallen(
   return [
     ...moveShapes(mark, markX, shelf + 0.5),
     number,
-    ...(hasSentence
-      ? [words({ x: sentenceX, y: shelf - 4, text: 'months, then its bound meets the limit', size: 15 })]
-      : []),
+    ...(hasSentence ? [words({ x: sentenceX, y: shelf - 4, text: 'months, and no further', size: 15 })] : []),
   ]
 }
 

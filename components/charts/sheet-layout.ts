@@ -94,14 +94,14 @@ export function sheetLayout(
   stationWidth: number,
   sentencesBelow = false,
 ): SheetLayout {
-  const glyph = glyphHeight(sheet.rows.length)
+  const fair = (available - stationWidth - RIGHT_MARGIN) / span(sheet)
+  const full = glyphHeight(sheet.rows.length)
+  // Smaller jars before a sheet that has to be pushed sideways.
+  const glyph = neededPerWeek(sheet.rows, full) > fair ? Math.min(full, 40) : full
   const points = [...new Set(sheet.rows.flatMap((row) => row.cells.map((cell) => cell.weeks)))].sort(
     (a, b) => a - b,
   )
-  const perWeek = Math.max(
-    neededPerWeek(sheet.rows, glyph),
-    (available - stationWidth - RIGHT_MARGIN) / span(sheet),
-  )
+  const perWeek = Math.max(neededPerWeek(sheet.rows, glyph), fair)
   const end = stationWidth + perWeek * span(sheet)
   const scale = timeScale(stationWidth, end, span(sheet))
   const right = end + RIGHT_MARGIN
