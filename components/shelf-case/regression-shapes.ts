@@ -91,7 +91,7 @@ export function regressionShapes(input: RegressionPlotInput): Shape[] {
     if (limit === null) continue
     shapes.push({ kind: 'line', x1: x0, x2: x1, y1: y(limit), y2: y(limit), stroke: 'alarm', width: 2 })
     const label = input.limitText[side]
-    const at = side === 'lower' ? y(limit) + 16 : y(limit) - 6
+    const at = side === 'lower' ? y(limit) - 6 : y(limit) + 16
     if (label) shapes.push({ ...word(x0 + 8, at, label, 'start', 13), weight: 700, fill: 'alarm' })
   }
   shapes.push({

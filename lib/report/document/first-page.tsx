@@ -8,6 +8,7 @@ import { mono } from '@/lib/report/document/fonts'
 import { style } from '@/lib/report/document/page-frame'
 import { Shelves } from '@/lib/report/document/shelves'
 import { dayText, figure, hashGroups, instantText } from '@/lib/report/rules'
+import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
 import type { ReportInput } from '@/lib/report/document/report'
 import type { AttributeEvidence, CaseContent } from '@/lib/shelf-case/rules/content'
 
@@ -23,7 +24,7 @@ export function FirstPage({ content, contentSha256, signatures }: ReportInput) {
         {dayText(study.lastReadOn)}
       </Text>
       <View style={{ flexDirection: 'row', alignItems: 'flex-end', marginTop: 4 }}>
-        <Text style={{ fontSize: 96, lineHeight: 0.95 }}>{String(proposal.months)}</Text>
+        <Text style={{ fontSize: 88, lineHeight: 0.95 }}>{String(proposal.months)}</Text>
         <Text style={{ fontSize: 34, marginLeft: 6, marginBottom: 7 }}>
           {proposal.months === 1 ? 'month' : 'months'}
         </Text>
@@ -36,7 +37,7 @@ export function FirstPage({ content, contentSha256, signatures }: ReportInput) {
         </View>
       </View>
       <Shelves content={content} />
-      {curve ? <Curve a={curve} content={content} height={150} /> : null}
+      {curve ? <Curve a={curve} content={content} height={140} /> : null}
       <View style={{ marginTop: 8 }}>
         <View style={style.headRow}>
           <Text style={{ width: 92 }}>Attribute</Text>
@@ -74,13 +75,13 @@ function basisText(content: CaseContent): string {
 }
 
 function AttributeRow({ a, isLimiting }: { a: AttributeEvidence; isLimiting: boolean }) {
-  const how = a.basis === 'regression' ? 'statistics' : 'every jar passed'
+  const how = a.basis === 'regression' ? 'statistics' : 'all passed'
   return (
     <View style={[style.row, isLimiting ? style.bold : {}, { alignItems: 'center' }]} wrap={false}>
       <Text style={{ width: 92 }}>{a.label}</Text>
       <Text style={{ width: 128 }}>{a.limit}</Text>
       <Text style={{ width: 62, textAlign: 'right' }}>
-        {a.worst ? `${figure(a.attribute, a.worst.value)} ${a.unit}` : ''}
+        {a.worst ? worstText(a.attribute, a.unit, a.worst.value) : ''}
       </Text>
       <View style={{ width: 122, paddingLeft: 14 }}>
         {a.worst ? (
@@ -110,10 +111,15 @@ function AttributeRow({ a, isLimiting }: { a: AttributeEvidence; isLimiting: boo
   )
 }
 
+function worstText(key: string, unit: string, value: number): string {
+  const words = attributeOf(key as AttributeKey).words
+  return words ? (words[value] ?? figure(key, value)) : `${figure(key, value)} ${unit}`.trim()
+}
+
 export function Signatures({ content, contentSha256, signatures }: ReportInput) {
   const zone = content.lab.timeZone
   return (
-    <View style={{ borderWidth: 1.5, borderColor: '#000', padding: 10, marginTop: 14 }} wrap={false}>
+    <View style={{ borderWidth: 1.5, borderColor: '#000', padding: 8, marginTop: 10 }} wrap={false}>
       <View style={{ flexDirection: 'row' }}>
         <View style={{ width: 190, marginRight: 14 }}>
           {signatures.map((s) => (

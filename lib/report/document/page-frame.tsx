@@ -45,7 +45,15 @@ export const style = StyleSheet.create({
 })
 
 /** One sheet of the report: the logo on its line, which case and page, and what the report is not. */
-export function PageFrame({ code, children }: { code: string; children?: ReactNode }) {
+export function PageFrame({
+  code,
+  isInvented,
+  children,
+}: {
+  code: string
+  isInvented: boolean
+  children?: ReactNode
+}) {
   return (
     <Page size="A4" style={style.page}>
       <View style={style.head} fixed>
@@ -70,6 +78,7 @@ export function PageFrame({ code, children }: { code: string; children?: ReactNo
         The comb draws the SHA-256 of the frozen content, digit by digit: compare it with the one on screen.
         Stillstand supports judgement; it does not certify. Safety, preservation and microbiology rest with
         qualified laboratories and the responsible assessor.
+        {isInvented ? ' Invented data of a demonstration.' : ''}
       </Text>
     </Page>
   )

@@ -28,7 +28,8 @@ export async function renderReport(input: ReportInput): Promise<Uint8Array> {
   registerFonts()
   const at = new Date(input.signatures.at(-1)?.signedAt ?? input.content.putForward.at)
   const { code } = input.content.case
-  const page = (key: string, content: ReactElement) => createElement(PageFrame, { code, key }, content)
+  const page = (key: string, content: ReactElement) =>
+    createElement(PageFrame, { code, key, isInvented: input.content.isInvented }, content)
   const document = createElement(
     Document,
     {

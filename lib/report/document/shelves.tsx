@@ -17,7 +17,7 @@ export function Shelves({ content }: { content: CaseContent }) {
   const span = Math.max(3, Math.ceil(last / 3) * 3)
   const x = (months: number) => left + (months / span) * (width - left - 26)
   // Seven shelves leave room for the curve and the signature on the same sheet.
-  const rowHeight = shelves.length > 5 ? 34 : 38
+  const rowHeight = shelves.length > 4 ? 33 : 38
   const height = 30 + shelves.length * rowHeight
   const tick = span > 24 ? 6 : span > 12 ? 3 : 1
   const marks = Array.from({ length: Math.floor(span / tick) + 1 }, (_, i) => i * tick)

@@ -37,7 +37,12 @@ export async function putCaseForward(trx: Trx, actor: Actor, code: string, input
   const { rows } = await sql<{ now: string }>`select app_now() as now`.execute(trx)
   const at = rows[0]?.now ?? ''
   const content = canonicalJson(
-    freeze(basis.computed, code, proposal, { by: actor.name, initials: actor.initials, at }),
+    freeze(basis.computed, code, proposal, {
+      by: actor.name,
+      initials: actor.initials,
+      at,
+      isInvented: actor.isDemo,
+    }),
   )
   const contentSha256 = createHash('sha256').update(content, 'utf8').digest('hex')
   const saved = await trx

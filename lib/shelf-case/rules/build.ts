@@ -14,7 +14,7 @@ import { temperatureRecord } from '@/lib/shelf-case/rules/temperature'
 import { weaknesses } from '@/lib/shelf-case/rules/weakness'
 import type { Evidence } from '@/lib/shelf-case/queries/evidence'
 
-export type Computed = Omit<CaseContent, 'case' | 'proposal' | 'putForward'>
+export type Computed = Omit<CaseContent, 'case' | 'proposal' | 'putForward' | 'isInvented'>
 
 type Temperatures = { measuredAt: string; temperatureC: number }[]
 
@@ -251,7 +251,7 @@ export function freeze(
   computed: Computed,
   code: string,
   proposal: CaseProposal,
-  putForward: CaseContent['putForward'],
+  { isInvented, ...putForward }: CaseContent['putForward'] & { isInvented: boolean },
 ): CaseContent {
   return {
     ...computed,
@@ -266,5 +266,6 @@ export function freeze(
       periodAfterOpeningEvidence: proposal.periodAfterOpeningEvidence,
     },
     putForward,
+    isInvented,
   }
 }

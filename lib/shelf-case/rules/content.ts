@@ -33,6 +33,8 @@ export type CaseContent = {
   missing: { jar: string; station: string; label: string; reason: string }[]
   readings: ReadingEvidence[]
   putForward: { by: string; initials: string; at: string }
+  /** Put forward by an invented person of the demo: the report says so on every page. */
+  isInvented: boolean
 }
 
 export type ShelfLifeInput = Parameters<typeof shelfLife>[0]
