@@ -1,4 +1,4 @@
-import { openJar, openStation, pick } from './bench'
+import { openJar, openStation, pick, readBalance } from './bench'
 import { openAs } from './people'
 import { expect, test } from './watch'
 
@@ -15,10 +15,12 @@ test('D09: a jar that is kept without network waits in the tray and goes out onc
   await page.getByRole('button', { name: 'Water below: 0.1 mm less' }).click()
   await pick(page, /^Look/)
   await page.getByRole('radio', { name: 'as the initial' }).click()
+  await pick(page, /^Mass/)
+  await page.getByLabel('Mass', { exact: true }).fill(await readBalance(page, code))
 
   watch.expectNoNetwork()
   await context.setOffline(true)
-  await page.getByRole('button', { name: 'Keep', exact: true }).click()
+  await page.getByRole('button', { name: /^Keep/ }).click()
   const tray = page.getByRole('button', { name: /^No network\. 1 jars? kept on this tablet/ })
   await expect(tray).toBeVisible()
   await expect(page, 'the next jar comes up all the same').not.toHaveURL(new RegExp(`${code}$`))

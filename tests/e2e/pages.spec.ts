@@ -5,6 +5,9 @@ import { filesNamed } from '../support/walk'
 import { openAs } from './people'
 import { expect, test } from './watch'
 
+// What axe finds says enough; a trace of every page would take longer than the page.
+test.use({ trace: 'off' })
+
 type Visit = {
   /** As the folder of the page is called under app. */
   page: string
@@ -31,7 +34,7 @@ const visits: Visit[] = [
   { page: 'studies/[code]', who: 'liv', at: '/studies/S-004', phone: true },
   { page: 'studies/[code]', who: 'pell', at: '/studies/S-001' },
   { page: 'studies/[code]/curves', who: 'liv', at: '/studies/S-004/curves', phone: true },
-  { page: 'studies/[code]/readings', who: 'rune', at: '/studies/S-004/readings' },
+  { page: 'studies/[code]/readings', who: 'rune', at: '/studies/S-006/readings' },
   { page: 'studies/[code]/jars', who: 'mada', at: '/studies/S-005/jars' },
   { page: 'studies/[code]/labels', who: 'mada', at: '/studies/S-005/labels' },
   { page: 'studies/[code]/record', who: 'rune', at: '/studies/S-005/record' },
@@ -61,9 +64,7 @@ const visits: Visit[] = [
 
 for (const visit of visits) {
   const address =
-    typeof visit.at === 'string'
-      ? visit.at
-      : `${visit.page} (${JSON.stringify(Object.values(visit.at).map(String))})`
+    typeof visit.at === 'string' ? visit.at : `${visit.page} by ${Object.values(visit.at).join(' ')}`
   test(`A07: ${address} as ${visit.who ?? 'a stranger'} keeps the policy, and axe finds nothing in either theme`, async ({
     page,
     watch,
