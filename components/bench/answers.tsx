@@ -7,7 +7,7 @@ import { Button } from '@/components/ui/button'
 import { Dialog } from '@/components/ui/dialog'
 import { Field } from '@/components/ui/field'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
-import type { ClientError } from '@/lib/http/fetcher'
+import { ClientError } from '@/lib/http/fetcher'
 import { attributes, type AttributeKey } from '@/lib/reading/schema/attributes'
 import { figure } from '@/lib/report/rules'
 
@@ -25,6 +25,29 @@ export type AlreadyRead = {
     typed: string
   }[]
   comparisons: { attribute: AttributeKey; difference: number; scatter: number; agree: boolean }[]
+}
+
+/** What the person said when the server asked. */
+export type Answer = {
+  confirmed?: string[]
+  leaveOut?: string[]
+  resolution?: { count: 'mine' | 'theirs'; reason: string }
+  version?: number
+}
+
+/** Without network: what the server would ask about fields that were left open. */
+export function askLocally(missing: { attribute: string; label: string }[]): ClientError {
+  const sentences = missing.map(({ attribute, label }): [string, string] => [
+    `missing.${attribute}`,
+    `${label} is not read yet. Read it, or say that it is left out.`,
+  ])
+  const [first] = sentences
+  return new ClientError({
+    status: 409,
+    code: 'confirm',
+    sentence: first?.[1] ?? 'A field is open.',
+    fields: Object.fromEntries(sentences),
+  })
 }
 
 type AskProps = { refusal: ClientError; onConfirm: () => void; onAgain: () => void; isBusy: boolean }

@@ -2,14 +2,17 @@
 
 import { useEffect, useMemo, useRef, useState } from 'react'
 import useSWR from 'swr'
-import { AskAgain, TwoPeople, type AlreadyRead } from '@/components/bench/answers'
+import { AskAgain, askLocally, TwoPeople, type AlreadyRead, type Answer } from '@/components/bench/answers'
 import type { BenchPerson } from '@/components/bench/bench-app'
 import { entriesOf, slotsOf, withIds } from '@/components/bench/draft'
 import { dayInstrument, rememberInstrument } from '@/components/bench/day-instrument'
 import { DonePanel } from '@/components/bench/done-panel'
 import { JarHead } from '@/components/bench/jar-head'
+import { KeepButton, whyNotKeep } from '@/components/bench/keep-button'
+import { JarNotices } from '@/components/bench/jar-notices'
 import { LayersPanel } from '@/components/bench/layers-panel'
 import { MissDialog } from '@/components/bench/miss-dialog'
+import { nextJar } from '@/components/bench/next-jar'
 import { OverviewPanel } from '@/components/bench/overview-panel'
 import { NotePanel, PhotoPanel, WordPanel } from '@/components/bench/other-panels'
 import { dropKept, isPassing, keep } from '@/components/bench/outbox'
@@ -128,6 +131,7 @@ function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }: OpenP
     const sending = { ...filled, confirmed }
     setDraft(() => sending)
     const readings = entriesOf(slots, sending, jar.fillHeightMm, (s) => dayInstrument(jar, s))
+    const missing = jar.fields.filter((f) => !readings.some((r) => r.attribute === f.attribute))
     setBusy(true)
     // Opening counts as a change of the jar; the jar as it is shown may still be the one before.
     const opened = (await opening.current) ?? jar.version
@@ -147,7 +151,10 @@ function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }: OpenP
       done(`Kept: ${jar.name}`)
     } catch (refused) {
       if (!(refused instanceof ClientError)) setError(refused)
-      else if (isPassing(refused)) {
+      else if (isPassing(refused) && missing.length > 0 && !extra.leaveOut) {
+        // Asked here, because nobody will be at the jar when the entry goes out.
+        setAsked(askLocally(missing))
+      } else if (isPassing(refused)) {
         keep({
           personId: person.personId,
           url: pullKeys.readings(jar.pullJarId),
@@ -192,6 +199,16 @@ function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }: OpenP
     })),
   ]
   const impossible = verdicts.find((v) => v.verdict.state === 'impossible')
+  const keepButton = (
+    <KeepButton
+      busy={isBusy}
+      left={open.length}
+      why={whyNotKeep(entries.length, impossible?.verdict)}
+      hasNext={next !== null}
+      onKeep={() => void save()}
+      onStep={open.some((s) => s.key !== at) ? step : null}
+    />
+  )
   const hasLayers = slots.some((s) => s.kind === 'layer')
   return (
     <div className="mx-auto flex min-h-dvh max-w-[1180px] flex-col">
@@ -213,31 +230,21 @@ function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }: OpenP
           </button>
         ) : null}
       </div>
-      {keptHere ? (
-        <p className="mx-4 mt-3 border-l-4 border-ink pl-3 sm:mx-7" role="status">
-          {keptHere.refused
-            ? `The server did not take what was kept here: ${keptHere.refused}`
-            : 'What you typed is kept on this tablet and goes out when the network is back.'}
-        </p>
-      ) : null}
-      {jar.openedBy && jar.openedBy.personId !== person.personId && mayType ? (
-        <p className="mx-4 mt-3 border-l-4 border-ink pl-3 sm:mx-7" role="status">
-          <b>{jar.openedBy.name}</b> has this jar open. If you both keep it, both stay on record and you say
-          which counts.
-        </p>
-      ) : null}
-      {isDone || !mayType ? (
-        isResting || (jar.asks !== 'watch' && jar.state === 'due' && mayType) ? null : (
-          <DonePanel
-            jar={jar}
-            mayLog={person.mayLog}
-            onChange={onChange}
-            onWalk={onWalk}
-            next={next}
-            onOpen={onOpen}
-          />
-        )
-      ) : null}
+      <JarNotices
+        jar={jar}
+        kept={keptHere}
+        isOthers={mayType && jar.openedBy?.personId !== person.personId}
+      />
+      {mayType || isResting ? null : (
+        <DonePanel
+          jar={jar}
+          mayLog={person.mayLog}
+          onChange={onChange}
+          onWalk={onWalk}
+          next={next}
+          onOpen={onOpen}
+        />
+      )}
       {isResting ? <RestPanel jar={jar} onWalk={onWalk} onChange={onChange} /> : null}
       {mayType ? (
         <>
@@ -275,16 +282,7 @@ function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }: OpenP
                 }}
                 onText={(text) => type(slot.key, text)}
                 onEnter={step}
-                keepButton={
-                  <KeepButton
-                    busy={isBusy}
-                    left={open.length}
-                    why={whyNotKeep(entries.length, impossible?.verdict)}
-                    hasNext={next !== null}
-                    onKeep={() => void save()}
-                    onStep={open.some((s) => s.key !== at) ? step : null}
-                  />
-                }
+                keepButton={keepButton}
               />
             ) : (
               <>
@@ -299,16 +297,7 @@ function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }: OpenP
                   <NotePanel note={draft.note} onNote={(note) => setDraft((d) => ({ ...d, note }))} />
                 ) : null}
                 {at === 'photo' ? <PhotoPanel jar={jar} /> : null}
-                <div className="ml-auto mt-4 max-w-[300px]">
-                  <KeepButton
-                    busy={isBusy}
-                    left={open.length}
-                    why={whyNotKeep(entries.length, impossible?.verdict)}
-                    hasNext={next !== null}
-                    onKeep={() => void save()}
-                    onStep={open.some((s) => s.key !== at) ? step : null}
-                  />
-                </div>
+                <div className="ml-auto mt-4 max-w-[300px]">{keepButton}</div>
               </>
             )}
           </div>
@@ -352,59 +341,4 @@ function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }: OpenP
       ) : null}
     </div>
   )
-}
-
-/** What the person said when the server asked. */
-type Answer = {
-  confirmed?: string[]
-  leaveOut?: string[]
-  resolution?: { count: 'mine' | 'theirs'; reason: string }
-  version?: number
-}
-
-function whyNotKeep(
-  count: number,
-  verdict: { state: string; sentence?: string | null } | undefined,
-): string | undefined {
-  if (verdict?.state === 'impossible') return 'One number cannot be so.'
-  return count === 0 ? 'Type at least one value.' : undefined
-}
-
-type KeepProps = {
-  busy: boolean
-  left: number
-  why: string | undefined
-  hasNext: boolean
-  onKeep: () => void
-  onStep: (() => void) | null
-}
-
-/** While fields are open it steps on; keeping with some left out stays possible beside it. */
-function KeepButton({ busy, left, why, hasNext, onKeep, onStep }: KeepProps) {
-  if (left > 0 && onStep)
-    return (
-      <div className="grid grid-cols-[1fr_auto] gap-3">
-        <Button density="bench" kind="primary" onClick={onStep}>
-          Next field
-        </Button>
-        <Button density="bench" busy={busy} why={why} onClick={onKeep}>
-          Keep
-        </Button>
-      </div>
-    )
-  return (
-    <Button density="bench" kind="primary" className="w-full" busy={busy} why={why} onClick={onKeep}>
-      {hasNext ? 'Keep, open next' : 'Keep'}
-    </Button>
-  )
-}
-
-/** The next jar to read at the same station, then at those after it. */
-function nextJar(bench: Bench, code: string, outbox: Outbox) {
-  const kept = new Set(outbox.kept.map((k) => k.code))
-  const all = bench.stations.flatMap((s) => s.jars)
-  const from = all.findIndex((j) => j.code === code)
-  const isOpen = (j: (typeof all)[number]) =>
-    j.code !== code && !kept.has(j.code) && (j.state === 'due' || j.isReady)
-  return [...all.slice(from + 1), ...all.slice(0, Math.max(0, from))].find(isOpen) ?? null
 }

@@ -38,9 +38,16 @@ export type Problems = {
 
 const noProblems: Problems = { lines: {}, steps: {} }
 
+const placeOf = (versionId: string, personId: string) => `stillstand:formula:${personId}:${versionId}`
+
+/** Whether this person typed here before a reload; only the browser knows. */
+export function hasKeptDraft(versionId: string, personId: string): boolean {
+  return readKept(placeOf(versionId, personId)) !== null
+}
+
 /** The draft on screen: what the server has, or what this person typed here before a reload. */
 export function useDraft(formula: FormulaPage, personId: string, isClient: boolean) {
-  const place = `stillstand:formula:${personId}:${formula.versionId}`
+  const place = placeOf(formula.versionId, personId)
   const server = useMemo(() => draftOf(formula), [formula])
   const [kept] = useState(() => (isClient && formula.state === 'draft' ? readKept(place) : null))
   const [base, setBase] = useState(server)

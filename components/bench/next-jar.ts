@@ -1,0 +1,12 @@
+import type { Outbox } from '@/components/bench/tray'
+import type { Bench } from '@/lib/bench/queries/today'
+
+/** The next jar to read at the same station, then at those after it. */
+export function nextJar(bench: Bench, code: string, outbox: Outbox) {
+  const kept = new Set(outbox.kept.map((k) => k.code))
+  const all = bench.stations.flatMap((s) => s.jars)
+  const from = all.findIndex((j) => j.code === code)
+  const isOpen = (j: (typeof all)[number]) =>
+    j.code !== code && !kept.has(j.code) && (j.state === 'due' || j.isReady)
+  return [...all.slice(from + 1), ...all.slice(0, Math.max(0, from))].find(isOpen) ?? null
+}
