@@ -28,7 +28,9 @@ export default defineConfig({
     ...devices['Desktop Chrome'],
     baseURL: demoLab.url,
     viewport: { width: 1440, height: 900 },
-    trace: 'retain-on-failure',
+    // A trace of every page takes longer than the page; what failed is seen on its picture.
+    trace: 'off',
+    screenshot: 'only-on-failure',
     launchOptions: {
       executablePath: '/usr/bin/chromium',
       args: [

@@ -5,9 +5,6 @@ import { filesNamed } from '../support/walk'
 import { openAs } from './people'
 import { expect, test } from './watch'
 
-// What axe finds says enough; a trace of every page would take longer than the page.
-test.use({ trace: 'off' })
-
 type Visit = {
   /** As the folder of the page is called under app. */
   page: string
