@@ -57,7 +57,9 @@ export function ReadSheet({ lines, phases, emulsionType, foot }: Props) {
               .filter((line) => line.phase === phase)
               .map((line) => (
                 <tr key={line.id} data-line={line.id} className="border-b border-hair [&_td]:px-2">
-                  <td className="h-9 py-1 leading-tight">{line.inciName.replaceAll('/', '/\u200b')}</td>
+                  <td className="h-9 break-words py-1 leading-tight">
+                    {line.inciName.replaceAll('/', '/\u200b')}
+                  </td>
                   <td colSpan={2} className="text-14 text-soft">
                     {line.function}
                   </td>
