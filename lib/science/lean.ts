@@ -1,6 +1,6 @@
 import { bandUsed } from './band'
 import type { Band, ColdestStation, Evidence } from './series'
-import { fitTrend, trendAt, type TrendFit, type TrendPoint } from './trend'
+import { fitTrend, slopePOf, trendAt, type TrendFit, type TrendPoint } from './trend'
 
 export type LeanInput = {
   /** Counted points in time order, the initial first. */
@@ -38,7 +38,7 @@ export function leanOf(input: LeanInput): Lean | null {
     evidence: {
       times: own.trend.n,
       slope: own.trend.slope,
-      slopeP: own.trend.slopeP,
+      slopeP: own.slopeP,
       alpha: own.alpha,
       usedNow: own.usedNow,
       usedAtEnd: own.usedAtEnd,
@@ -48,7 +48,7 @@ export function leanOf(input: LeanInput): Lean | null {
   }
 }
 
-type BandUse = { trend: TrendFit; alpha: number; usedNow: number; usedAtEnd: number }
+type BandUse = { trend: TrendFit; slopeP: number; alpha: number; usedNow: number; usedAtEnd: number }
 
 /** The part of the rule that a station's own readings decide. */
 function trendUsesBand(
@@ -61,10 +61,6 @@ function trendUsesBand(
   if (points.length < leastTimes) return null
   const trend = fitTrend(points, repeatabilitySd)
   if (trend === null || trend.slope === 0) return null
-  const isOneSided = band.lower === null || band.upper === null
-  const alpha = isOneSided ? 0.1 : points.length >= 11 ? 0.02 : 0.005
-  if (trend.slopeP >= alpha) return null
-
   const latest = points[points.length - 1]!.time
   const now = trendAt(trend, latest)
   const end = trendAt(trend, Math.max(endTime, latest))
@@ -73,7 +69,12 @@ function trendUsesBand(
   if (usedNow === null || usedAtEnd === null) return null
   const isSameSide = Math.sign(now - initial) === Math.sign(end - initial)
   if (!isSameSide || usedNow < (endTime > 26 ? 0.55 : 0.5) || usedAtEnd < 0.8) return null
-  return { trend, alpha, usedNow, usedAtEnd }
+
+  const isOneSided = band.lower === null || band.upper === null
+  const alpha = isOneSided ? 0.1 : points.length >= 11 ? 0.02 : 0.005
+  const slopeP = slopePOf(trend)
+  if (slopeP >= alpha) return null
+  return { trend, slopeP, alpha, usedNow, usedAtEnd }
 }
 
 /** How the comparison with the coldest other station confirms the trend, or null. */
@@ -94,7 +95,7 @@ function againstColdest(input: LeanInput, coldest: ColdestStation, trend: TrendF
   }
   if (differences.length >= leastSharedDays) {
     const fit = fitTrend(differences, repeatabilitySd, Math.SQRT2)
-    if (fit && Math.sign(fit.slope) === Math.sign(trend.slope) && fit.slopeP < 0.05) return 'difference'
+    if (fit && Math.sign(fit.slope) === Math.sign(trend.slope) && slopePOf(fit) < 0.05) return 'difference'
   }
   const { replicates, time: latest } = points[points.length - 1]!
   const known = cold.filter((c) => c.time < latest + sameDay)

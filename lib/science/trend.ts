@@ -10,8 +10,6 @@ export type TrendPoint = { time: number; mean: number; replicates: number }
 export type TrendFit = Trend & {
   /** Without the floor. */
   residualSd: number
-  /** One-sided, in the direction of the slope. */
-  slopeP: number
 }
 
 /**
@@ -43,14 +41,14 @@ export function fitTrend(
     sumSquaresTime: xx,
     sd,
     residualSd,
-    slopeP: oneSidedP(Math.abs(slope) * Math.sqrt(xx), sd, n - 2),
   }
 }
 
-/** Points exactly on a rising or falling line leave nothing to chance; points on a level one everything. */
-function oneSidedP(scaledSlope: number, sd: number, df: number): number {
+/** One-sided p of the slope, in its own direction. Points exactly on a line leave nothing to chance, level ones everything. */
+export function slopePOf({ n, slope, sumSquaresTime, sd }: Trend): number {
+  const scaledSlope = Math.abs(slope) * Math.sqrt(sumSquaresTime)
   if (sd === 0) return scaledSlope === 0 ? 0.5 : 0
-  return tUpperTail(scaledSlope / sd, df)
+  return tUpperTail(scaledSlope / sd, n - 2)
 }
 
 export function trendAt(trend: Trend, time: number): number {
