@@ -70,4 +70,4 @@ function refuse(line: string): void {
   process.exitCode = 2
 }
 
-await main(process.argv.slice(2))
+void main(process.argv.slice(2))

@@ -7,14 +7,10 @@ import { allTopics, findTopic, topicNames } from '@/lib/science/calc/topics'
 import type { Topic } from '@/lib/science/calc/topic'
 
 const root = path.resolve(import.meta.dirname, '../..')
-const tsx = path.join(root, 'node_modules/.bin/tsx')
 
 function calc(args: string[], input: string) {
-  const { status, stdout, stderr } = spawnSync(tsx, [path.join(root, 'lib/cli/calc.ts'), ...args], {
-    cwd: root,
-    input,
-    encoding: 'utf8',
-  })
+  const command = [path.join(root, 'lib/cli/calc.mjs'), ...args]
+  const { status, stdout, stderr } = spawnSync(process.execPath, command, { input, encoding: 'utf8' })
   return { status, stdout, stderr }
 }
 
