@@ -1,6 +1,7 @@
 import { Ledger } from '@/components/ui/ledger'
 import type { AttributeEvidence } from '@/lib/shelf-case/rules/content'
 import type { Computed } from '@/lib/shelf-case/rules/build'
+import { crossingText, decidingFit, slopeText, testText } from '@/lib/shelf-case/rules/scale'
 
 /** The statistics of each attribute in figures; each row names the topic of `calc` that makes it again. */
 export function CarryTable({ content }: { content: Computed }) {
@@ -39,15 +40,15 @@ export function CarryTable({ content }: { content: Computed }) {
           title: 'resid. SD',
           align: 'right',
           from: 'desk',
-          cell: (a) => deciding(a)?.residualSd.toPrecision(2) ?? '',
+          cell: (a) => decidingFit(a)?.residualSd.toPrecision(2) ?? '',
         },
-        { key: 'ps', title: 'p, slopes', align: 'right', from: 'desk', cell: (a) => pText(a, 'slopes') },
+        { key: 'ps', title: 'p, slopes', align: 'right', from: 'desk', cell: (a) => testText(a, 'slopes') },
         {
           key: 'pi',
           title: 'p, intercepts',
           align: 'right',
           from: 'desk',
-          cell: (a) => pText(a, 'intercepts'),
+          cell: (a) => testText(a, 'intercepts'),
         },
         {
           key: 'months',
@@ -67,32 +68,6 @@ function weight(a: AttributeEvidence, content: Computed): string {
   return a.attribute === content.limitingAttribute ? 'font-700' : ''
 }
 
-function deciding(a: AttributeEvidence) {
-  const out = a.calc?.output
-  return out?.batches.find((b) => b.name === out.limitingBatch) ?? out?.batches[0]
-}
-
-function slopeText(a: AttributeEvidence): string {
-  const slope = deciding(a)?.slope
-  if (slope === undefined) return ''
-  // A logarithm's slope is, for small changes, the share lost a month.
-  if (a.scale.includes('logarithm')) return `${sign((Math.exp(slope) - 1) * 100, 2)} %`
-  return sign(slope, 3)
-}
-
-function sign(value: number, decimals: number): string {
-  return value < 0 ? `\u2212${Math.abs(value).toFixed(decimals)}` : `+${value.toFixed(decimals)}`
-}
-
-function pText(a: AttributeEvidence, name: string): string {
-  const out = a.calc?.output
-  if (!out) return ''
-  const test = out.tests.find((t) => t.name === name)
-  if (!test) return out.batches.length > 1 ? 'not asked' : 'one batch'
-  return test.p === null ? 'not known' : test.p < 0.001 ? '< 0.001' : test.p.toPrecision(2)
-}
-
 function monthsText(a: AttributeEvidence): string {
-  if (a.basis === 'observed') return String(a.supportedMonths)
-  return a.crossingMonths === null ? 'past 60' : a.crossingMonths.toFixed(1)
+  return a.basis === 'observed' ? String(a.supportedMonths) : crossingText(a)
 }

@@ -8,7 +8,7 @@ import { NumberField } from '@/components/ui/number-field'
 import { toast } from '@/components/ui/toast'
 import { newId } from '@/lib/db/id'
 import { send } from '@/lib/http/fetcher'
-import { sideOf } from '@/lib/station/rules'
+import { sideOf } from '@/lib/science/temperature-log'
 import { stationKeys } from '@/lib/station/schema'
 
 type Station = { id: string; name: string; lowC: number | null; highC: number | null }

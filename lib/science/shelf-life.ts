@@ -50,7 +50,7 @@ export function shelfLife(input: ShelfLifeInput): ShelfLife {
   }
 
   const { model, tests, lines, residualSd, df } = fitPooling(batches, poolingAlpha)
-  const quantile = tQuantile(direction === 'either' ? 1 - (1 - confidence) / 2 : confidence, df)
+  const quantile = boundQuantile(direction, confidence, df)
   const found = lines.map(({ name, line, intercept }) => {
     const bounded = { ...line, width: quantile * residualSd }
     return { name, slope: line.slope, intercept, residualSd, df, ...firstCrossing(bounded, limits, horizon) }
@@ -67,6 +67,15 @@ export function shelfLife(input: ShelfLifeInput): ShelfLife {
     crossing: first?.crossing ?? null,
     limitingBatch: isShared ? null : (first?.name ?? null),
   })
+}
+
+/** One-sided where the attribute moves one way, two-sided where it may move either (ICH Q1E, 2003). */
+export function boundQuantile(
+  direction: ShelfLifeInput['direction'],
+  confidence: number,
+  df: number,
+): number {
+  return tQuantile(direction === 'either' ? 1 - (1 - confidence) / 2 : confidence, df)
 }
 
 type Limits = { lower: number | null; upper: number | null }

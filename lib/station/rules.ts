@@ -1,4 +1,5 @@
 import { meanKineticTemperature } from '@/lib/science/mean-kinetic-temperature'
+import { excursionSpans, hoursOfEntries } from '@/lib/science/temperature-log'
 
 export type StationLimits = {
   kind: string
@@ -23,62 +24,23 @@ export type StationRecord = {
  * excursions here.
  */
 export function recordOf(station: StationLimits, log: StationTemperature[]): StationRecord {
-  if (log.length === 0)
-    return { readings: 0, mktC: null, meanC: null, minC: null, maxC: null, excursions: [] }
-  const times = log.map((entry) => Date.parse(entry.measuredAt) / 3_600_000)
-  const mean = meanKineticTemperature(
-    log.map((entry) => entry.temperatureC),
-    spread(times) > 0 ? hoursOf(times) : undefined,
-  )
-  return { readings: log.length, ...mean, excursions: excursions(station, log) }
-}
-
-function spread(times: number[]): number {
-  return times.at(-1)! - times[0]!
-}
-
-/** Hours each reading stands for: half the gap on either side. Readings of the same instant share it. */
-function hoursOf(times: number[]): number[] {
-  return times.map((time, index) => {
-    const before = times[index - 1] ?? time
-    const after = times[index + 1] ?? time
-    return Math.max((after - before) / 2, 1e-6)
-  })
-}
-
-function excursions(station: StationLimits, log: StationTemperature[]): Excursion[] {
-  if (station.kind !== 'temperature') return []
-  const found: Excursion[] = []
-  let open: Excursion | null = null
-  for (const { measuredAt, temperatureC } of log) {
-    const side = sideOf(station, temperatureC)
-    if (open && side !== open.side) {
-      found.push(closed(open, measuredAt))
-      open = null
-    }
-    if (!side) continue
-    open ??= { from: measuredAt, to: measuredAt, extremeC: temperatureC, hours: 0, side }
-    open.to = measuredAt
-    open.extremeC =
-      side === 'above' ? Math.max(open.extremeC, temperatureC) : Math.min(open.extremeC, temperatureC)
+  const [first] = log
+  if (!first) return { readings: 0, mktC: null, meanC: null, minC: null, maxC: null, excursions: [] }
+  const hours = log.map((entry) => (Date.parse(entry.measuredAt) - Date.parse(first.measuredAt)) / 3_600_000)
+  const temperatures = log.map((entry) => entry.temperatureC)
+  const mean = meanKineticTemperature(temperatures, hoursOfEntries(hours))
+  const spans = station.kind === 'temperature' ? excursionSpans(hours, temperatures, station) : []
+  return {
+    readings: log.length,
+    ...mean,
+    excursions: spans.map(({ from, to, side, extremeC, hours }) => ({
+      from: log[from]!.measuredAt,
+      to: log[to]!.measuredAt,
+      extremeC,
+      hours: Math.round(hours * 10) / 10,
+      side,
+    })),
   }
-  if (open) found.push(closed(open, open.to))
-  return found
-}
-
-/** It ended at the latest when the first reading inside was taken. */
-function closed(excursion: Excursion, to: string): Excursion {
-  const hours = (Date.parse(to) - Date.parse(excursion.from)) / 3_600_000
-  return { ...excursion, to, hours: Math.round(hours * 10) / 10 }
-}
-
-export function sideOf(
-  limits: { lowC: number | null; highC: number | null },
-  temperatureC: number,
-): 'above' | 'below' | null {
-  if (limits.highC !== null && temperatureC > limits.highC) return 'above'
-  if (limits.lowC !== null && temperatureC < limits.lowC) return 'below'
-  return null
 }
 
 /** Free places of a station, shelf by shelf from the top, those in `taken` left out. */

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { claimedInstant } from '@/lib/reading/rules/claimed-time'
 import { conditionDoubts, cycleDoubts } from '@/lib/reading/rules/entry-doubts'
-import { massChangePercent } from '@/lib/reading/rules/mass-change'
+import { massChangePercent } from '@/lib/science/mass-change'
 import { ImpossibleEntry, valueOf, type TypedEntry, type ValueContext } from '@/lib/reading/rules/value'
 import { readTyped } from '@/lib/reading/schema/typed'
 

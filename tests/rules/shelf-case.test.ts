@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { AppError } from '@/lib/http/errors'
 import { canonicalJson } from '@/lib/shelf-case/rules/canonical'
-import { monthsOf, nominalMonths } from '@/lib/shelf-case/rules/months'
+import { monthsOf, nominalMonths } from '@/lib/science/months'
 import { assertProposal, assertState, whyNotSign } from '@/lib/shelf-case/rules/refusals'
 import { caseProposal } from '@/lib/shelf-case/schema'
 

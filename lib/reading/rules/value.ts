@@ -1,11 +1,11 @@
 import type { PlannedAttribute } from '@/lib/protocol/schema'
 import { ScienceError } from '@/lib/science/guard'
+import { massChangePercent } from '@/lib/science/mass-change'
 import { separation } from '@/lib/science/separation'
 import { viscosity, viscosityFactor } from '@/lib/science/viscosity'
 import { attributeOf, type Attribute, type AttributeKey } from '../schema/attributes'
 import type { EntryDetail } from '../schema/entry'
 import { readTyped } from '../schema/typed'
-import { massChangePercent } from './mass-change'
 
 /** What must be known of the jar and the protocol to make a value of what was typed. */
 export type ValueContext = {

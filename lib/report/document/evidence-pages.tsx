@@ -3,6 +3,7 @@ import { Curve, firstCurve } from '@/lib/report/document/curve'
 import { style } from '@/lib/report/document/page-frame'
 import { dayText } from '@/lib/report/rules'
 import type { CaseContent } from '@/lib/shelf-case/rules/content'
+import { crossingText, slopeText, testText } from '@/lib/shelf-case/rules/scale'
 
 /** The statistics of every attribute with its curve, the temperature record, and what weakens the case. */
 export function EvidencePages({ content }: { content: CaseContent }) {
@@ -56,31 +57,15 @@ function StatisticsTable({ content }: { content: CaseContent }) {
         <Text style={{ flex: 1, textAlign: 'right' }}>decided by</Text>
       </View>
       {content.attributes.map((a) => {
-        const out = a.calc?.output
-        const p = (name: string) => {
-          const test = out?.tests?.find((t) => t.name === name)
-          return test
-            ? test.p === null
-              ? 'not known'
-              : test.p < 0.001
-                ? 'under 0.001'
-                : test.p.toFixed(3)
-            : ''
-        }
-        const steepest = out?.batches.find((b) => b.name === out.limitingBatch) ?? out?.batches[0]
         return (
           <View key={a.attribute} style={style.row} wrap={false}>
             <Text style={{ width: 84 }}>{a.label}</Text>
             <Text style={{ width: 30, textAlign: 'right' }}>{String(a.n)}</Text>
-            <Text style={{ width: 90, paddingLeft: 12 }}>{out?.model ?? 'last passed'}</Text>
-            <Text style={{ width: 72, textAlign: 'right' }}>
-              {steepest ? steepest.slope.toPrecision(3).replace(/^-/, '\u2212') : ''}
-            </Text>
-            <Text style={{ width: 56, textAlign: 'right' }}>{p('slopes')}</Text>
-            <Text style={{ width: 64, textAlign: 'right' }}>{p('intercepts')}</Text>
-            <Text style={{ width: 54, textAlign: 'right' }}>
-              {out ? (a.crossingMonths === null ? 'past 60' : a.crossingMonths.toFixed(1)) : ''}
-            </Text>
+            <Text style={{ width: 90, paddingLeft: 12 }}>{a.calc?.output.model ?? 'last passed'}</Text>
+            <Text style={{ width: 72, textAlign: 'right' }}>{slopeText(a)}</Text>
+            <Text style={{ width: 56, textAlign: 'right' }}>{testText(a, 'slopes')}</Text>
+            <Text style={{ width: 64, textAlign: 'right' }}>{testText(a, 'intercepts')}</Text>
+            <Text style={{ width: 54, textAlign: 'right' }}>{crossingText(a)}</Text>
             <Text style={{ flex: 1, textAlign: 'right' }}>{a.decidedBy ?? 'all'}</Text>
           </View>
         )

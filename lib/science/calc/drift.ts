@@ -26,11 +26,11 @@ export const driftTopic = topic({
   name: 'drift',
   says: 'Where a series stands: band, standing, trend, flags and doubts',
   input:
-    '{times:[], values:[], initial?, tolerance, endTime, repeatabilitySd?:0, coldest?:{times, values}, detectionLimit?}',
+    '{times:[], values:[], initial?, tolerance, endTime, repeatabilitySd?:0, coldest?:{times, values}, detectionLimit?, settled?:[{time, rule}]}',
   output:
     '{band:{lower, upper}, standing, used, slope, slopeP, leavesAt, leavesAtLow, leavesAtHigh, rules:[{rule, level, at, evidence}]}',
   notes:
-    'Weeks. values are numbers or lists of replicates; a time given again is a repeat on a spare jar. Without initial the earliest entry is the initial; with it an entry at time 0 is left out. tolerance is {kind:"range", lower?, upper?}, {kind:"percent", below?, above?} or {kind:"shift", below?, above?}; one side left out means one-sided. slopeP is one-sided. With detectionLimit the series is separation: lists are jars, and the worst counts.',
+    'Weeks. values are numbers or lists of replicates; a time given again is a repeat on a spare jar. Without initial the earliest entry is the initial; with it an entry at time 0 is left out. tolerance is {kind:"range", lower?, upper?}, {kind:"percent", below?, above?} or {kind:"shift", below?, above?}; one side left out means one-sided. slopeP is one-sided. With detectionLimit the series is separation: lists are jars, and the worst counts. settled names doubts of the rules (jump, spread, out) that a person set aside.',
   example: examples.drift,
   read: readSeries,
   compute: (input) => {
@@ -80,7 +80,7 @@ export const instrumentDayTopic = topic({
   },
 })
 
-function readSeries(raw: unknown): SeriesInput {
+export function readSeries(raw: unknown): SeriesInput {
   const fields = fieldsOf(raw, '', [
     'times',
     'values',
@@ -90,6 +90,7 @@ function readSeries(raw: unknown): SeriesInput {
     'repeatabilitySd',
     'coldest',
     'detectionLimit',
+    'settled',
   ])
   const times = numbers(fields, 'times')
   const values = replicates(fields, 'values')
@@ -120,13 +121,18 @@ function readSeries(raw: unknown): SeriesInput {
     readings: readingsOf(
       stated ? entries.filter((e) => e.time !== 0) : entries.slice(1),
       detectionLimit !== undefined,
+      has(fields, 'settled') ? list(fields, 'settled', readSettled) : [],
     ),
     ...(has(fields, 'coldest') ? { coldest: readColdest(fields, initialTime) } : {}),
   }
 }
 
 /** Entries of one time make one day: the first is the pull, what follows are its repeats. */
-function readingsOf(entries: { time: number; values: number[] }[], areJars: boolean): SeriesReading[] {
+function readingsOf(
+  entries: { time: number; values: number[] }[],
+  areJars: boolean,
+  settled: { time: number; rule: string }[],
+): SeriesReading[] {
   const firstAt = new Map<number, string>()
   return entries.flatMap((entry, i) => {
     const repeatOf = firstAt.get(entry.time)
@@ -138,7 +144,9 @@ function readingsOf(entries: { time: number; values: number[] }[], areJars: bool
       day: String(entry.time),
       jar: `${i}.${jar}`,
       values,
-      doubts: [],
+      doubts: settled
+        .filter(({ time }) => time === entry.time)
+        .map(({ rule }) => ({ reason: rule, settled: true })),
       ...(repeatOf === undefined ? {} : { isRepeatOf: repeatOf }),
     }))
   })
@@ -151,6 +159,11 @@ function readColdest(fields: Fields, initialTime: number) {
   assertSameLength('coldest.times', times, 'coldest.values', values)
   const kept = times.map((_, i) => i).filter((i) => times[i] !== initialTime)
   return { times: kept.map((i) => times[i]!), values: kept.map((i) => values[i]!) }
+}
+
+function readSettled(raw: unknown, path: string) {
+  const fields = fieldsOf(raw, path, ['time', 'rule'])
+  return { time: number(fields, 'time'), rule: choice(fields, 'rule', ['jump', 'spread', 'out']) }
 }
 
 function readTolerance(fields: Fields): Tolerance {

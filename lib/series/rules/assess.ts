@@ -1,11 +1,12 @@
 import { assessSeries } from '@/lib/science/drift'
 import { ScienceError } from '@/lib/science/guard'
-import type { ColdestStation, SeriesFinding } from '@/lib/science/series'
+import type { ColdestStation, SeriesFinding, SeriesInput } from '@/lib/science/series'
 import type { Frame } from '../queries/frame'
 import { seriesUnits, type Unit } from './input'
 import { shiftedDays, type ShiftedDay } from './shifted-day'
 
-export type Assessed = { unit: Unit; finding: SeriesFinding }
+/** What the rules were given, with the coldest other station, and what they found. */
+export type Assessed = { unit: Unit; input: SeriesInput; finding: SeriesFinding }
 
 /** All series of these attributes (all of the study's where null) and the days on which an instrument was off. */
 export function assessStudy(
@@ -17,8 +18,9 @@ export function assessStudy(
   const cold = new Map(units.map((unit) => [unit, asColdest(unit)]))
   const assessed = units.flatMap((unit) => {
     const coldest = coldestOther(unit, units, cold)
-    const finding = assess(coldest ? { ...unit.input, coldest } : unit.input)
-    return finding ? [{ unit, finding }] : []
+    const input = coldest ? { ...unit.input, coldest } : unit.input
+    const finding = assess(input)
+    return finding ? [{ unit, input, finding }] : []
   })
   return { assessed, shifted }
 }

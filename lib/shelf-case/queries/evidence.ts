@@ -2,11 +2,15 @@ import type { Db, Trx } from '@/lib/db/client'
 import type { Actor } from '@/lib/auth/actor'
 import { refuse } from '@/lib/http/errors'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
-import type { SeriesFinding } from '@/lib/science/series'
+import { loadFrame } from '@/lib/series/queries/frame'
+import { assessStudy } from '@/lib/series/rules/assess'
 
 export type Evidence = Awaited<ReturnType<typeof loadEvidence>>
 
-/** Everything a case is computed from, in eight statements whatever the size of the study. */
+/**
+ * Everything a case is computed from, in ten statements whatever the size of the study. The series are judged anew
+ * from the readings, so that what a case freezes is what its inputs give.
+ */
 export async function loadEvidence(db: Db | Trx, actor: Actor, studyId: string) {
   const study = await db
     .selectFrom('study')
@@ -41,11 +45,7 @@ export async function loadEvidence(db: Db | Trx, actor: Actor, studyId: string) 
     .where('ss.studyId', '=', studyId)
     .orderBy('ss.position')
     .execute()
-  const series = await db
-    .selectFrom('series')
-    .select(['batchId', 'studyStationId', 'attribute', 'standing', 'used', 'finding'])
-    .where('studyId', '=', studyId)
-    .execute()
+  const { assessed } = assessStudy(await loadFrame(db, studyId), null)
   const readings = await db
     .selectFrom('reading as r')
     .innerJoin('person as p', 'p.id', 'r.recordedBy')
@@ -107,7 +107,15 @@ export async function loadEvidence(db: Db | Trx, actor: Actor, studyId: string) 
     lab,
     batches,
     stations,
-    series: series.map((s) => ({ ...s, finding: s.finding as SeriesFinding })),
+    series: assessed.map(({ unit, input, finding }) => ({
+      batchId: unit.batch.id,
+      studyStationId: unit.station.id,
+      attribute: unit.attribute,
+      input,
+      finding,
+      // A jar's replicates are one reading to the rules, named by its first row.
+      rowIds: new Map(unit.jars.map((jar) => [jar.id, jar.ids])),
+    })),
     readings: readings.map((r) => ({ ...r, detail: r.detail as Record<string, unknown> })),
     flags,
     missed,

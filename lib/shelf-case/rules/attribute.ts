@@ -1,14 +1,18 @@
+import { monthsOf, nominalMonths } from '@/lib/science/months'
+import type { SeriesFinding, SeriesInput } from '@/lib/science/series'
 import { shelfLife } from '@/lib/science/shelf-life'
-import type { SeriesFinding } from '@/lib/science/series'
+import { limitsOnScale, onScale, shelfLifeScale } from '@/lib/science/shelf-life-scale'
 import type { PlannedAttribute } from '@/lib/protocol/schema'
 import { attributeOf } from '@/lib/reading/schema/attributes'
 import type { AttributeEvidence, ShelfLifeInput } from '@/lib/shelf-case/rules/content'
-import { monthsOf, nominalMonths } from '@/lib/shelf-case/rules/months'
+import { driftCalculation } from '@/lib/shelf-case/rules/drift-calculation'
+import { scaleWords } from '@/lib/shelf-case/rules/scale'
 
 export const horizonMonths = 60
 
 export type BatchSeries = {
   batch: string
+  input: SeriesInput
   finding: SeriesFinding
   /** Single observations that count, the initial's included; times in weeks. */
   observations: { weeks: number; value: number }[]
@@ -38,6 +42,7 @@ export function attributeEvidence(
     n: batches.reduce((sum, b) => sum + b.observations.length, 0),
     worst: worstOf(batches),
     band: bandOf(batches),
+    series: batches.map((b) => ({ batch: b.batch, calc: driftCalculation(b.input) })),
     reading: batches.flatMap((b) =>
       b.finding.points.map((p) => ({ batch: b.batch, months: nominalMonths(p.time) })),
     ),
@@ -57,7 +62,10 @@ export function attributeEvidence(
       decidedBy: least?.batch ?? null,
     }
   }
-  const { input, scale } = regressionInput(planned, batches)
+  const { input, scale } = regressionInput(
+    planned,
+    batches.map((b) => ({ ...b, initial: b.finding.initial })),
+  )
   const output = shelfLife(input)
   return {
     ...common,
@@ -65,13 +73,18 @@ export function attributeEvidence(
     scale,
     calc: { topic: 'shelf-life', input, output },
     crossingMonths: output.crossing,
-    supportedMonths: Math.floor(Math.min(output.crossing ?? horizonMonths, cap)),
+    supportedMonths: regressionMonths(output.crossing, cap),
     decidedBy: output.crossing === null ? null : output.limitingBatch,
   }
 }
 
+/** Whole months, rounded down, that a regression carries: to its crossing, or the horizon, within the cap. */
+export function regressionMonths(crossing: number | null, cap: number): number {
+  return Math.floor(Math.min(crossing ?? horizonMonths, cap))
+}
+
 /** Months up to which every counted point lay inside the band; 0 where even the first left it. */
-function lastPassedMonths(finding: SeriesFinding): number {
+export function lastPassedMonths(finding: Pick<SeriesFinding, 'points'>): number {
   let passed = 0
   for (const point of finding.points) {
     if (point.isInitial || !point.counted) continue
@@ -81,59 +94,29 @@ function lastPassedMonths(finding: SeriesFinding): number {
   return passed
 }
 
+type Regressed = { batch: string; initial: number; observations: BatchSeries['observations'] }
+
 /**
- * The regression's y. Viscosity is fitted as a natural logarithm, and a tolerance relative to each batch's own
+ * The regression's input. Viscosity is fitted as a natural logarithm, and a tolerance relative to each batch's own
  * initial is made common by dividing by (or subtracting) that initial, so that one limit serves all batches.
  */
-function regressionInput(
-  planned: PlannedAttribute,
-  batches: BatchSeries[],
+export function regressionInput(
+  { attribute, tolerance }: Pick<PlannedAttribute, 'attribute' | 'tolerance'>,
+  batches: Regressed[],
 ): { input: ShelfLifeInput; scale: string } {
-  const t = planned.tolerance
-  const isLog = planned.attribute === 'viscosity' || t.kind === 'percent'
-  const transform = (value: number, initial: number) =>
-    t.kind === 'percent'
-      ? Math.log(value / initial)
-      : t.kind === 'shift'
-        ? value - initial
-        : isLog
-          ? Math.log(value)
-          : value
-  const limit: { lower?: number; upper?: number } = {}
-  if (t.kind === 'range') {
-    if (t.lower !== undefined) limit.lower = isLog ? Math.log(t.lower) : t.lower
-    if (t.upper !== undefined) limit.upper = isLog ? Math.log(t.upper) : t.upper
-  } else if (t.kind === 'percent') {
-    if (t.below !== undefined && t.below < 100) limit.lower = Math.log(1 - t.below / 100)
-    if (t.above !== undefined) limit.upper = Math.log(1 + t.above / 100)
-  } else {
-    if (t.below !== undefined) limit.lower = -t.below
-    if (t.above !== undefined) limit.upper = t.above
-  }
-  const direction =
-    limit.lower !== undefined && limit.upper !== undefined
-      ? 'either'
-      : limit.lower !== undefined
-        ? 'decreasing'
-        : 'increasing'
-  const scale =
-    t.kind === 'percent'
-      ? 'natural logarithm of the share of each batch’s own initial'
-      : t.kind === 'shift'
-        ? 'difference from each batch’s own initial'
-        : isLog
-          ? 'natural logarithm of the reading'
-          : 'the reading'
+  const scale = shelfLifeScale(tolerance, attribute === 'viscosity')
+  const limit = limitsOnScale(scale, tolerance)
+  const isBoth = limit.lower !== undefined && limit.upper !== undefined
   return {
-    scale,
+    scale: scaleWords[scale],
     input: {
       batches: batches.map((b) => ({
         name: b.batch,
         t: b.observations.map((o) => monthsOf(o.weeks)),
-        y: b.observations.map((o) => transform(o.value, b.finding.initial)),
+        y: b.observations.map((o) => onScale(scale, o.value, b.initial)),
       })),
       limit,
-      direction,
+      direction: isBoth ? 'either' : limit.lower !== undefined ? 'decreasing' : 'increasing',
       confidence: 0.95,
       poolingAlpha: 0.25,
       horizon: horizonMonths,
@@ -158,7 +141,13 @@ function limitText(planned: PlannedAttribute, unit: string): string {
   return t.below !== undefined ? `at most ${t.below}${of} below` : `at most ${t.above}${of} above`
 }
 
-function worstOf(batches: BatchSeries[]): AttributeEvidence['worst'] {
+type Judged = {
+  batch: string
+  finding: Pick<SeriesFinding, 'latest' | 'latestTime' | 'used' | 'band' | 'initial'>
+}
+
+/** The batch that has used most of its band, at its latest reading. */
+export function worstOf(batches: Judged[]): AttributeEvidence['worst'] {
   let worst: (AttributeEvidence['worst'] & { used: number }) | null = null
   for (const b of batches) {
     if (b.finding.latest === null || b.finding.latestTime === null) continue
@@ -169,7 +158,7 @@ function worstOf(batches: BatchSeries[]): AttributeEvidence['worst'] {
   return worst && { batch: worst.batch, months: worst.months, value: worst.value }
 }
 
-function bandOf(batches: BatchSeries[]): AttributeEvidence['band'] {
+export function bandOf(batches: Judged[]): AttributeEvidence['band'] {
   const worst = worstOf(batches)
   const finding = batches.find((b) => b.batch === worst?.batch)?.finding ?? batches[0]?.finding
   return {

@@ -1,4 +1,5 @@
 import { extrapolationCap } from '@/lib/science/extrapolation-cap'
+import { nominalMonths } from '@/lib/science/months'
 import { separation } from '@/lib/science/separation'
 import { protocolPlan } from '@/lib/protocol/schema'
 import type { CaseProposal } from '@/lib/shelf-case/schema'
@@ -9,7 +10,7 @@ import type {
   ReadingEvidence,
   ShelfEvidence,
 } from '@/lib/shelf-case/rules/content'
-import { nominalMonths } from '@/lib/shelf-case/rules/months'
+import { driftCalculation } from '@/lib/shelf-case/rules/drift-calculation'
 import { temperatureRecord } from '@/lib/shelf-case/rules/temperature'
 import { weaknesses } from '@/lib/shelf-case/rules/weakness'
 import type { Evidence } from '@/lib/shelf-case/queries/evidence'
@@ -60,9 +61,10 @@ export function computeCase(
     evidence.batches.flatMap((b) => {
       const found = atStation.find((s) => s.batchId === b.id && s.attribute === attribute)
       if (!found) return []
-      const counted = new Set(found.finding.points.flatMap((p) => p.countedIds))
+      const counted = new Set(found.finding.points.flatMap((p) => rowsOf(found, p.countedIds)))
       return {
         batch: b.code,
+        input: found.input,
         finding: found.finding,
         observations: standing
           .filter(
@@ -97,7 +99,7 @@ export function computeCase(
   }))
   const lastRead = standing.at(-1)?.measuredAt ?? evidence.study.startedAt
   return {
-    format: 'stillstand-case-1',
+    format: 'stillstand-case-2',
     lab: { name: evidence.lab.name, timeZone: evidence.lab.timeZone },
     study: {
       code: evidence.study.code,
@@ -154,7 +156,7 @@ function capOf(evidence: Evidence, station: Evidence['stations'][number], dataMo
     return there.some((s) => {
       const series = evidence.series.filter((x) => x.studyStationId === s.id)
       const months = Math.max(0, ...series.flatMap((x) => x.finding.points.map((p) => nominalMonths(p.time))))
-      return months >= 6 && series.every((x) => x.standing !== 'out')
+      return months >= 6 && series.every((x) => x.finding.standing !== 'out')
     })
   }
   const acceleratedChange = !isUnchanged(38, 42)
@@ -171,7 +173,7 @@ function capOf(evidence: Evidence, station: Evidence['stations'][number], dataMo
   const why = acceleratedChange
     ? 'Six months at 40 °C without significant change are not shown.'
     : 'Six months at 40 °C without significant change.'
-  return { input, output: extrapolationCap(input), why }
+  return { topic: 'extrapolation-cap' as const, input, output: extrapolationCap(input), why }
 }
 
 function shelvesOf(evidence: Evidence): ShelfEvidence[] {
@@ -181,20 +183,6 @@ function shelvesOf(evidence: Evidence): ShelfEvidence[] {
         (x) => x.studyStationId === s.id && x.batchId === b.id && x.attribute === 'separation',
       )
       if (!found) return []
-      const layersOf = (ids: string[]) => {
-        const worst = evidence.readings
-          .filter((r) => ids.includes(r.id))
-          .sort((x, y) => (y.value ?? 0) - (x.value ?? 0))[0]
-        const mm = (key: string) =>
-          typeof worst?.detail[key] === 'number' ? (worst.detail[key] as number) : 0
-        if (mm('totalMm') <= 0) return { topPercent: 0, bottomPercent: worst?.value ?? 0 }
-        const { topPercent, bottomPercent } = separation({
-          totalMm: mm('totalMm'),
-          topMm: mm('topMm'),
-          bottomMm: mm('bottomMm'),
-        })
-        return { topPercent, bottomPercent }
-      }
       return {
         label: s.isFreezeThaw ? 'freeze-thaw' : `${s.temperatureC}`,
         temperatureC: s.temperatureC,
@@ -203,13 +191,30 @@ function shelvesOf(evidence: Evidence): ShelfEvidence[] {
         batch: b.code,
         jars: found.finding.points.map((p) => ({
           months: nominalMonths(p.time),
-          ...layersOf(p.readingIds),
+          ...layersOf(evidence.readings.filter((r) => rowsOf(found, p.readingIds).includes(r.id))),
           percent: p.mean,
           standing: p.standing,
         })),
+        calc: driftCalculation(found.input),
       }
     }),
   )
+}
+
+/** The layers of the worst jar of a pull, as they are drawn. */
+function layersOf(readings: Evidence['readings']) {
+  const worst = readings.toSorted((x, y) => (y.value ?? 0) - (x.value ?? 0))[0]
+  const mm = (key: string) => (typeof worst?.detail[key] === 'number' ? (worst.detail[key] as number) : 0)
+  const input = { totalMm: mm('totalMm'), topMm: mm('topMm'), bottomMm: mm('bottomMm') }
+  if (input.totalMm <= 0) return { topPercent: 0, bottomPercent: worst?.value ?? 0, calc: null }
+  const output = separation(input)
+  const { topPercent, bottomPercent } = output
+  return { topPercent, bottomPercent, calc: { topic: 'separation' as const, input, output } }
+}
+
+/** Rows of the record behind the readings that the rules name. */
+function rowsOf({ rowIds }: Evidence['series'][number], ids: string[]): string[] {
+  return ids.flatMap((id) => rowIds.get(id) ?? [id])
 }
 
 function readingTable(
@@ -219,7 +224,12 @@ function readingTable(
 ): ReadingEvidence[] {
   const uncounted = new Set(
     evidence.series.flatMap((s) =>
-      s.finding.points.flatMap((p) => p.readingIds.filter((id) => !p.countedIds.includes(id))),
+      s.finding.points.flatMap((p) =>
+        rowsOf(
+          s,
+          p.readingIds.filter((id) => !p.countedIds.includes(id)),
+        ),
+      ),
     ),
   )
   return evidence.readings.map((r) => ({

@@ -1,9 +1,35 @@
-import type { shelfLife } from '@/lib/science/shelf-life'
+import type { assessSeries } from '@/lib/science/drift'
 import type { extrapolationCap } from '@/lib/science/extrapolation-cap'
+import type { mkt } from '@/lib/science/mkt'
+import type { separation } from '@/lib/science/separation'
+import type { SeriesInput } from '@/lib/science/series'
+import type { shelfLife } from '@/lib/science/shelf-life'
+import type { TemperatureLimits } from '@/lib/science/temperature-log'
 
-/** What a case freezes. Every printed figure is in here, with the exact input it was computed from. */
+/** What `npm run calc -- TOPIC` makes again to the last digit: topic, exact input and answer. */
+export type Calculation<Topic extends string, Input, Output> = { topic: Topic; input: Input; output: Output }
+
+export type DriftInput = Pick<SeriesInput, 'initial' | 'tolerance' | 'endTime' | 'repeatabilitySd'> & {
+  times: number[]
+  values: number[][]
+  coldest?: { times: number[]; values: number[] }
+  detectionLimit?: number
+  settled?: { time: number; rule: 'jump' | 'spread' | 'out' }[]
+}
+type DriftAnswer =
+  ('band' | 'standing' | 'used' | 'slope' | 'slopeP' | 'leavesAt' | 'leavesAtLow' | 'leavesAtHigh') | 'rules'
+export type DriftCalculation = Calculation<
+  'drift',
+  DriftInput,
+  Pick<ReturnType<typeof assessSeries>, DriftAnswer>
+>
+
+/**
+ * What a case freezes: every printed figure, with the exact input of the calculation it comes from. Cases frozen in
+ * format 1 stay as they are and lack what is marked "since format 2".
+ */
 export type CaseContent = {
-  format: 'stillstand-case-1'
+  format: 'stillstand-case-1' | 'stillstand-case-2'
   lab: { name: string; timeZone: string }
   case: { code: string; kind: 'real time' | 'provisional' }
   study: { code: string; title: string; startedOn: string; lastReadOn: string; endWeeks: number }
@@ -22,6 +48,8 @@ export type CaseContent = {
   limitingAttribute: string | null
   dataMonths: number
   cap: {
+    /** Since format 2. */
+    topic?: 'extrapolation-cap'
     input: Parameters<typeof extrapolationCap>[0]
     output: ReturnType<typeof extrapolationCap>
     why: string
@@ -49,7 +77,7 @@ export type AttributeEvidence = {
   basis: 'regression' | 'observed'
   /** How y of the calculation follows from the readings. */
   scale: string
-  calc: { topic: 'shelf-life'; input: ShelfLifeInput; output: ShelfLifeOutput } | null
+  calc: Calculation<'shelf-life', ShelfLifeInput, ShelfLifeOutput> | null
   /** Months at which the bound meets the limit; null where it stays inside up to the horizon, or not asked. */
   crossingMonths: number | null
   supportedMonths: number
@@ -57,6 +85,8 @@ export type AttributeEvidence = {
   worst: { batch: string; months: number; value: number } | null
   band: { lower: number | null; upper: number | null; initial: number | null }
   reading: { batch: string; months: number }[]
+  /** How each batch stands at the station of the case: band, worst reading and last time passed. Since format 2. */
+  series?: { batch: string; calc: DriftCalculation | null }[]
 }
 
 export type ShelfEvidence = {
@@ -65,16 +95,24 @@ export type ShelfEvidence = {
   isFreezeThaw: boolean
   voice: string
   batch: string
-  jars: { months: number; topPercent: number; bottomPercent: number; percent: number; standing: string }[]
+  jars: {
+    months: number
+    topPercent: number
+    bottomPercent: number
+    percent: number
+    standing: string
+    /** The layers drawn, from the heights measured. Since format 2. */
+    calc?: Calculation<'separation', Parameters<typeof separation>[0], ReturnType<typeof separation>> | null
+  }[]
+  /** The jars' separation and standings. Since format 2. */
+  calc?: DriftCalculation | null
 }
 
 export type TemperatureRecord = {
   station: string
-  calc: {
-    topic: 'mkt'
-    input: { temperaturesC: number[]; hoursEach: number[] }
-    output: { mktC: number; meanC: number; minC: number; maxC: number }
-  }
+  calc: Calculation<'mkt', Parameters<typeof mkt>[0], ReturnType<typeof mkt>>
+  /** What the excursions are found from: the first entry, hours since it, the station's limits. Since format 2. */
+  log?: { firstAt: string; hours: number[]; limits: TemperatureLimits }
   excursions: { from: string; to: string; hours: number; worstC: number }[]
 }
 

@@ -1,7 +1,7 @@
-import { tQuantile } from '@/lib/science/distributions'
-import { boundAt } from '@/lib/science/meeting'
-import { fitPooling } from '@/lib/science/pooling'
+import { shelfLifeLines } from '@/lib/science/shelf-life-lines'
+import { fromScale } from '@/lib/science/shelf-life-scale'
 import type { AttributeEvidence } from '@/lib/shelf-case/rules/content'
+import { scaleOf } from '@/lib/shelf-case/rules/scale'
 
 export type RegressionView = {
   unit: string
@@ -12,40 +12,32 @@ export type RegressionView = {
 type Sample = { t: number; y: number }
 
 /**
- * The frozen regression in the unit shown: lines from the case's own slopes and intercepts, taken back from
- * logarithms, and the bound of the line that decides, from the same observations at the same confidence.
+ * The frozen regression in the unit shown: the lines and the bound of the one that decides, from the
+ * case's own observations, taken back from the scale on which they were fitted.
  */
 export function regressionView(evidence: AttributeEvidence, upTo: number): RegressionView | null {
   if (!evidence.calc) return null
   const { input, output } = evidence.calc
-  const isShare = evidence.scale.includes('share')
-  const isLog = evidence.scale.includes('logarithm')
-  const back = (y: number) => (isLog ? Math.exp(y) * (isShare ? 100 : 1) : y)
+  const scale = scaleOf(evidence.scale)
+  const back = (y: number) => fromScale(scale, y)
   const at = Array.from({ length: 61 }, (_, i) => (i * upTo) / 60)
-  const { lines, residualSd, df } = fitPooling(input.batches, input.poolingAlpha ?? 0.25)
-  const confidence = input.confidence ?? 0.95
-  const quantile = tQuantile(input.direction === 'either' ? 1 - (1 - confidence) / 2 : confidence, df)
+  const lines = shelfLifeLines(input, at)
   const deciding = output.limitingBatch ?? input.batches[0]?.name
+  const samples = (values: number[] | undefined) =>
+    (values ?? []).map((y, i): Sample => ({ t: at[i] ?? 0, y: back(y) }))
   return {
-    unit: isShare ? '% of each batch’s own initial' : evidence.unit,
+    unit: scale === 'log share' ? '% of each batch’s own initial' : evidence.unit,
     lower: input.limit.lower === undefined ? null : back(input.limit.lower),
     upper: input.limit.upper === undefined ? null : back(input.limit.upper),
     batches: input.batches.map((b) => {
-      const fit = output.batches.find((x) => x.name === b.name)
+      const side = output.batches.find((x) => x.name === b.name)?.side
       const line = lines.find((x) => x.name === b.name)
-      const sign = fit?.side === 'upper' ? 1 : -1
       return {
         name: b.name,
         t: [...b.t],
         y: b.y.map(back),
-        line: at.map((t) => ({ t, y: back((fit?.intercept ?? 0) + (fit?.slope ?? 0) * t) })),
-        bound:
-          line && fit?.side && b.name === deciding
-            ? at.map((t) => ({
-                t,
-                y: back(boundAt({ ...line.line, width: quantile * residualSd }, sign, t)),
-              }))
-            : [],
+        line: samples(line?.mean),
+        bound: side && b.name === deciding ? samples(line?.[side]) : [],
       }
     }),
   }
