@@ -1,4 +1,4 @@
-import { readFileSync } from 'node:fs'
+import { text } from 'node:stream/consumers'
 import type { Topic } from '../science/calc/topic'
 import { allTopics, findTopic, topicNames } from '../science/calc/topics'
 import { ScienceError } from '../science/guard'
@@ -16,15 +16,14 @@ async function main(args: string[]): Promise<void> {
   if (wantsHelp) return print(helpOf(topic))
   if (rest.length > 0)
     return refuse(`topic: one at a time, not also "${rest.join(' ')}"; input comes from stdin`)
-  answer(topic)
+  answer(topic, await text(process.stdin))
 }
 
-function answer(topic: Topic): void {
-  const text = readFileSync(0, 'utf8')
-  if (text.trim() === '') return refuse(`input: is empty; see calc ${topic.name} --help`)
+function answer(topic: Topic, input: string): void {
+  if (input.trim() === '') return refuse(`input: is empty; see calc ${topic.name} --help`)
   let raw: unknown
   try {
-    raw = JSON.parse(text)
+    raw = JSON.parse(input)
   } catch (error) {
     return refuse(`input: is not valid JSON: ${error instanceof Error ? error.message : String(error)}`)
   }
@@ -51,7 +50,11 @@ function helpOf(topic: Topic): string {
     `${topic.name}: ${topic.says}`,
     '',
     `Input:  ${topic.input}`,
+    ...listed(topic.fields.input),
+    '',
     `Output: ${topic.output}`,
+    ...listed(topic.fields.output),
+    '',
     topic.notes,
     '',
     'Example input:',
@@ -61,12 +64,17 @@ function helpOf(topic: Topic): string {
   ].join('\n')
 }
 
+function listed(fields: Record<string, string>): string[] {
+  const width = Math.max(...Object.keys(fields).map((name) => name.length))
+  return Object.entries(fields).map(([name, says]) => `  ${name.padEnd(width)}  ${says}`)
+}
+
 function print(text: string): void {
   process.stdout.write(`${text}\n`)
 }
 
 function refuse(line: string): void {
-  process.stderr.write(`${line.replace(/\s+/g, ' ')}\n`)
+  process.stderr.write(`${line.replace(/[\s\p{Cc}]+/gu, ' ')}\n`)
   process.exitCode = 2
 }
 

@@ -1,4 +1,5 @@
-import { assertComputable, assertFinite, assertNotNegative, assertPositive } from './guard'
+import { assertComputable, assertNotNegative, assertPositive } from './guard'
+import { kelvin } from './kelvin'
 
 export type AcceleratedAgeInput = {
   storageC: number
@@ -15,8 +16,8 @@ export function acceleratedAge({
   q10,
   targetMonths,
 }: AcceleratedAgeInput): AcceleratedAge {
-  assertFinite('storageC', storageC)
-  assertFinite('acceleratedC', acceleratedC)
+  kelvin('storageC', storageC)
+  kelvin('acceleratedC', acceleratedC)
   assertPositive('q10', q10)
   assertNotNegative('targetMonths', targetMonths)
   const factor = Math.pow(q10, (acceleratedC - storageC) / 10)

@@ -1,14 +1,8 @@
 import { tTwoTails } from './distributions'
-import {
-  assertComputable,
-  assertFinite,
-  assertNumbers,
-  assertPositive,
-  assertSameLength,
-  ScienceError,
-} from './guard'
+import { assertComputable, assertNumbers, assertPositive, assertSameLength, ScienceError } from './guard'
 import { leastSquares } from './least-squares'
-import { gasConstant, zeroCelsius } from './mean-kinetic-temperature'
+import { kelvin } from './kelvin'
+import { gasConstant } from './mean-kinetic-temperature'
 import { fitLine, predictLine } from './regression'
 
 export type ArrheniusInput = { temperaturesC: number[]; rates: number[]; predictC?: number[] }
@@ -39,7 +33,6 @@ export function arrhenius({ temperaturesC, rates, predictC = [] }: ArrheniusInpu
 
   const fit = fitLine(inverse, logs)
   const predictions = predictC.map((t, i) => {
-    assertFinite(`predictC[${i}]`, t)
     const { mean, meanLow, meanHigh } = predictLine(fit, 1 / kelvin(`predictC[${i}]`, t))
     return { temperatureC: t, rate: Math.exp(mean), low: Math.exp(meanLow), high: Math.exp(meanHigh) }
   })
@@ -53,16 +46,10 @@ export function arrhenius({ temperaturesC, rates, predictC = [] }: ArrheniusInpu
   })
 }
 
-function kelvin(field: string, celsius: number): number {
-  const value = celsius + zeroCelsius
-  if (value <= 0) throw new ScienceError(field, `${celsius} °C is not above absolute zero`)
-  return value
-}
-
 function curvatureOf(inverse: readonly number[], logs: readonly number[]): Arrhenius['curvature'] {
   if (new Set(inverse).size < 4) return { p: null, doubt: 'curvature not tested: it takes four temperatures' }
-  const low = Math.min(...inverse)
-  const range = Math.max(...inverse) - low
+  const low = inverse.reduce((least, x) => Math.min(least, x))
+  const range = inverse.reduce((most, x) => Math.max(most, x)) - low
   const design = inverse.map((x) => [1, (2 * (x - low)) / range - 1, ((2 * (x - low)) / range - 1) ** 2])
   const { coefficients, standardErrors, df } = leastSquares(design, logs)
   if (!(standardErrors[2]! > 0)) return { p: null, doubt: null }

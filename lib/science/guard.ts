@@ -27,7 +27,10 @@ export function assertNotNegative(field: string, value: unknown): asserts value 
 }
 
 export function assertNumbers(field: string, values: readonly number[], least: number): void {
-  values.forEach((value, i) => assertFinite(`${field}[${i}]`, value))
+  // Means are taken by the million: a field's name is only spelled out where it is needed.
+  for (let i = 0; i < values.length; i++) {
+    if (!Number.isFinite(values[i])) assertFinite(`${field}[${i}]`, values[i])
+  }
   if (values.length < least) {
     throw new ScienceError(
       field,
@@ -43,7 +46,10 @@ export function assertSameLength(
   b: readonly unknown[],
 ): void {
   if (a.length !== b.length) {
-    throw new ScienceError(fieldB, `has ${b.length} values, but ${fieldA} has ${a.length}`)
+    throw new ScienceError(
+      fieldB,
+      `has ${b.length} ${b.length === 1 ? 'value' : 'values'}, but ${fieldA} has ${a.length}`,
+    )
   }
 }
 

@@ -1,4 +1,4 @@
-import { assertComputable, assertFinite, assertPositive, ScienceError } from './guard'
+import { assertComputable, assertFinite, assertNotNegative, assertPositive, ScienceError } from './guard'
 
 export type JarPlanStation = {
   name: string
@@ -48,7 +48,7 @@ export function jarPlan(input: JarPlanInput): JarPlan {
     assertCount(`${at}.watchJars`, station.watchJars)
     assertCount(`${at}.measuringJarsPerPull`, station.measuringJarsPerPull)
     assertCount(`${at}.spares`, station.spares)
-    station.timePoints.forEach((time, j) => assertFinite(`${at}.timePoints[${j}]`, time))
+    station.timePoints.forEach((time, j) => assertNotNegative(`${at}.timePoints[${j}]`, time))
     watchJars += station.watchJars
     measuringJars += station.measuringJarsPerPull * station.timePoints.length
     spares += station.spares

@@ -19,7 +19,7 @@ export function leastSquares(design: readonly (readonly number[])[], y: readonly
   if (design.length !== y.length)
     throw new ScienceError('y', `has ${y.length} values for ${design.length} rows`)
 
-  const scales = Array.from({ length: columns }, (_, j) => Math.hypot(...design.map((row) => row[j]!)))
+  const scales = Array.from({ length: columns }, (_, j) => norm(design.map((row) => row[j]!)))
   if (scales.some((scale) => scale === 0)) throw new ScienceError('design', 'has a column of zeros')
   const scaled = new Matrix(design.map((row) => row.map((value, j) => value / scales[j]!)))
   const qr = new QrDecomposition(scaled)
@@ -38,6 +38,14 @@ export function leastSquares(design: readonly (readonly number[])[], y: readonly
     residualSd,
     df,
   })
+}
+
+/** Length of a vector of any number of entries, neither overflowing nor vanishing. */
+function norm(values: readonly number[]): number {
+  const largest = values.reduce((most, value) => Math.max(most, Math.abs(value)), 0)
+  return largest === 0
+    ? 0
+    : largest * Math.sqrt(values.reduce((sum, value) => sum + (value / largest) ** 2, 0))
 }
 
 /** Inverse of an upper triangular matrix; its row norms are √ of the diagonal of (X'X)⁻¹. */

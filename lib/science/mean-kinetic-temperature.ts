@@ -1,9 +1,8 @@
 import { assertComputable, assertNumbers, assertPositive, assertSameLength, ScienceError } from './guard'
+import { kelvin, zeroCelsius } from './kelvin'
 
 /** J/(mol·K), CODATA 2018. */
 export const gasConstant = 8.314462618
-/** 0 °C in kelvin. */
-export const zeroCelsius = 273.15
 /** kJ/mol, the customary activation enthalpy: USP <1160>, Haynes 1971 [std]. */
 export const defaultDeltaHkJ = 83.144
 
@@ -21,10 +20,7 @@ export function meanKineticTemperature(
 ): MeanKineticTemperature {
   assertNumbers('temperaturesC', temperaturesC, 1)
   assertPositive('deltaHkJ', deltaHkJ)
-  temperaturesC.forEach((t, i) => {
-    if (t + zeroCelsius <= 0)
-      throw new ScienceError(`temperaturesC[${i}]`, `${t} °C is not above absolute zero`)
-  })
+  const kelvins = temperaturesC.map((t, i) => kelvin(`temperaturesC[${i}]`, t))
   const hours = hoursEach ?? temperaturesC.map(() => 1)
   if (hoursEach) {
     assertNumbers('hoursEach', hoursEach, 1)
@@ -51,13 +47,13 @@ export function meanKineticTemperature(
   temperaturesC.forEach((t, i) => {
     const share = hours[i]! / total
     if (share === 0) return
-    rate += share * Math.expm1(scale * (1 / warmest - 1 / (t + zeroCelsius)))
+    rate += share * Math.expm1(scale * (1 / warmest - 1 / kelvins[i]!))
     meanAboveMin += share * (t - minC)
   })
-  const kelvin = 1 / (1 / warmest - Math.log1p(Math.max(-1, rate)) / scale)
+  const steady = 1 / (1 / warmest - Math.log1p(Math.max(-1, rate)) / scale)
   const meanC = Math.min(maxC, minC + meanAboveMin)
   return assertComputable('temperaturesC', {
-    mktC: Math.min(maxC, Math.max(meanC, kelvin - zeroCelsius)),
+    mktC: Math.min(maxC, Math.max(meanC, steady - zeroCelsius)),
     meanC,
     minC,
     maxC,

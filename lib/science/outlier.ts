@@ -19,7 +19,7 @@ export function outlier({ values, alpha = 0.05 }: { values: number[]; alpha?: nu
   const centre = mean(values)
   const sd = sampleStandardDeviation(values)
   const distances = values.map((value) => Math.abs(value - centre))
-  const index = distances.indexOf(Math.max(...distances))
+  const index = distances.reduce((furthest, d, i) => (d > distances[furthest]! ? i : furthest), 0)
   const g = sd === 0 || values.every((value) => value === values[0]) ? null : distances[index]! / sd
   const critical = grubbsCritical(values.length, alpha)
   return assertComputable('values', { g, critical, index, outlier: g !== null && g > critical })

@@ -1,5 +1,6 @@
 import { assertComputable, assertFinite, ScienceError } from './guard'
-import { gasConstant, zeroCelsius } from './mean-kinetic-temperature'
+import { kelvin } from './kelvin'
+import { gasConstant } from './mean-kinetic-temperature'
 import { centredSums } from './regression'
 
 /** C/mol, CODATA 2018. */
@@ -19,11 +20,7 @@ export type PhSlope = {
 
 /** ln(10)·R·T/F in mV per pH: 59.16 at 25 °C. */
 export function theoreticalSlope(temperatureC: number): number {
-  assertFinite('temperatureC', temperatureC)
-  if (temperatureC + zeroCelsius <= 0) {
-    throw new ScienceError('temperatureC', `${temperatureC} °C is not above absolute zero`)
-  }
-  return (1000 * Math.LN10 * gasConstant * (temperatureC + zeroCelsius)) / faraday
+  return (1000 * Math.LN10 * gasConstant * kelvin('temperatureC', temperatureC)) / faraday
 }
 
 /** Slope and offset of a pH meter from a two- or three-point (or longer) least-squares line of mV on buffer pH. */

@@ -52,6 +52,7 @@ describe('calc as a command', { timeout: 60_000 }, () => {
     for (const name of topicNames) expect(help.stdout).toContain(`  ${name} `)
     const own = calc(['mkt', '--help'], '')
     expect(own.stdout).toContain('Input:  {temperaturesC:[], hoursEach?:[], deltaHkJ?:83.144}')
+    expect(own.stdout).toContain('  deltaHkJ       activation enthalpy in kJ/mol; 83.144 if left out\n')
     expect(own.stdout).toContain('"mktC": 25.26373')
   })
 })
@@ -60,6 +61,36 @@ describe('topics', () => {
   it('are the twenty that are promised', () => {
     expect(topicNames).toEqual(topics.map((topic) => topic.name))
     expect(topicNames).toHaveLength(20)
+  })
+
+  it('each explain every field of input and output, and no other', () => {
+    for (const { name, input, output, fields, example } of topics) {
+      for (const [part, line, sample] of [
+        ['input', input, example.input],
+        ['output', output, example.output],
+      ] as const) {
+        const explained = Object.keys(fields[part])
+        for (const path of pathsOf(sample)) {
+          expect(
+            explained.some((field) => path === field || path.startsWith(`${field}.`)),
+            `${name} ${path}`,
+          ).toBe(true)
+        }
+        const words = line.match(/\w+/g)!
+        for (const word of explained.flatMap((field) => field.match(/\w+/g)!)) {
+          expect(words, name).toContain(word)
+        }
+      }
+    }
+  })
+
+  it('take a hundred thousand values as they take ten', () => {
+    const many = Array.from({ length: 2e5 }, (_, i) => 20 + (i % 7))
+    const run = (name: Topic['name'], input: unknown) =>
+      topics.find((topic) => topic.name === name)!.run(input)
+    expect(run('outlier', { values: many })).toMatchObject({ outlier: false })
+    expect(run('mkt', { temperaturesC: many })).toMatchObject({ minC: 20, maxC: 26 })
+    expect(run('arrhenius', { temperaturesC: many, rates: many })).toMatchObject({ curvature: {} })
   })
 
   it('each compute their worked example', () => {
@@ -93,13 +124,55 @@ describe('topics', () => {
       { lines: [{ percent: 1, density: 1, internal: 'yes' }] },
       /^lines\[0\]\.internal: must be true or false/,
     ],
+    [
+      'shelf-life',
+      { batches: [{ name: 'A', t: [0, 1, 2], y: [1, 2, 3] }], limit: {}, direction: 'either', horizon: 9 },
+      'limit: needs a lower or an upper limit for direction "either"',
+    ],
+    ['regression', { x: [1, 2, 3], y: [1, 2] }, 'y: needs at least 3 values, has 2'],
+    ['regression', { x: [1, 2, 3, 4], y: [1, 2, 3] }, 'y: has 3 values, but x has 4'],
+    ['regression', { x: [2, 2, 2], y: [1, 2, 3] }, 'x: has no spread: all values are equal'],
+    ['separation-curve', { t: [2, 2, 2], percent: [0, 0, 3] }, 't: has no spread: all times are equal'],
+    ['mkt', { temperaturesC: [20, -273.15] }, 'temperaturesC[1]: -273.15 °C is not above absolute zero'],
+    [
+      'accelerated-age',
+      { storageC: 25, acceleratedC: -300, q10: 2, targetMonths: 12 },
+      'acceleratedC: -300 °C is not above absolute zero',
+    ],
+    ['arrhenius', { temperaturesC: [25, 37, 45], rates: [1, 0, 2] }, 'rates[1]: must be above 0, not 0'],
+    [
+      'phase-fraction',
+      { lines: [{ percent: 1, density: 0, internal: true }] },
+      'lines[0].density: must be above 0, not 0',
+    ],
+    [
+      'separation',
+      { totalMm: 40, topMm: 21, bottomMm: 20 },
+      'bottomMm: and topMm together are higher than the fill of 40',
+    ],
+    ['outlier', { values: [1, 2] }, 'values: needs at least 3 values, has 2'],
+    [
+      'ph-slope',
+      { points: [{ bufferPh: 7, mV: 1 }], temperatureC: 25 },
+      'points: needs at least 2 points, has 1',
+    ],
+    [
+      'buffer-ph',
+      { buffer: 'x'.repeat(99), temperatureC: 25 },
+      `buffer: must be one of phthalate, phosphate, borax, not "${'x'.repeat(30)}…"`,
+    ],
+    [
+      'centrifuge',
+      { rpm: 1, radiusMm: 1, 'a\nb': 1 },
+      '"a\\nb": is not a field here; known are rpm, radiusMm',
+    ],
     ['viscosity', { torquePercent: 1, factor: 2, rpm: 3 }, /^factor: stands for spindleConstant and rpm/],
     ['viscosity', { torquePercent: 1 }, 'factor: is missing'],
     ['separation', { totalMm: 40, topMm: 41, bottomMm: 0 }, 'topMm: is higher than the fill of 40'],
     [
       'drift',
       { times: [0, 1], values: [1], tolerance: { kind: 'shift' }, endTime: 9 },
-      /^values: has 1 values, but times has 2/,
+      /^values: has 1 value, but times has 2/,
     ],
     [
       'drift',
@@ -189,6 +262,16 @@ describe('never NaN or Infinity, whatever stands in the input', () => {
     )
   })
 })
+
+/** Every leaf of a value, list entries as []. */
+function pathsOf(value: unknown, path = ''): string[] {
+  if (Array.isArray(value))
+    return value.flatMap((entry: unknown) => pathsOf(entry, leafless(entry) ? path : `${path}[]`))
+  if (value === null || typeof value !== 'object') return [path]
+  return Object.entries(value).flatMap(([key, inner]) => pathsOf(inner, path === '' ? key : `${path}.${key}`))
+}
+
+const leafless = (entry: unknown) => entry === null || typeof entry !== 'object' || Array.isArray(entry)
 
 /** Equal up to the last digits, which differ between processors. */
 function expectClose(actual: unknown, expected: unknown, at: string): void {

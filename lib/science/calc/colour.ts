@@ -8,7 +8,7 @@ export const colourTopic = topic({
   says: 'Colour difference CIEDE2000 and ΔE*ab',
   input: '{reference:{L,a,b}, sample:{L,a,b}}',
   output: '{deltaE00, deltaE76}',
-  notes: 'CIELAB coordinates.',
+  notes: 'Both differences are 0 only for equal colours; the order of the two does not matter.',
   example: examples.colour,
   read: (raw) => {
     const fields = fieldsOf(raw, '', ['reference', 'sample'])

@@ -26,11 +26,11 @@ export const driftTopic = topic({
   name: 'drift',
   says: 'Where a series stands: band, standing, trend, flags and doubts',
   input:
-    '{times:[], values:[], initial?, tolerance, endTime, repeatabilitySd?:0, coldest?:{times, values}, detectionLimit?, settled?:[{time, rule}]}',
+    '{times:[], values:[], initial?, tolerance:{kind, lower?, upper?, below?, above?}, endTime, repeatabilitySd?:0, coldest?:{times, values}, detectionLimit?, settled?:[{time, rule}]}',
   output:
     '{band:{lower, upper}, standing, used, slope, slopeP, leavesAt, leavesAtLow, leavesAtHigh, rules:[{rule, level, at, evidence}]}',
   notes:
-    'Weeks. values are numbers or lists of replicates; a time given again is a repeat on a spare jar. Without initial the earliest entry is the initial; with it an entry at time 0 is left out. tolerance is {kind:"range", lower?, upper?}, {kind:"percent", below?, above?} or {kind:"shift", below?, above?}; one side left out means one-sided. slopeP is one-sided. With detectionLimit the series is separation: lists are jars, and the worst counts. settled names doubts of the rules (jump, spread, out) that a person set aside.',
+    'A time given again is a repeat on a spare jar; with initial an entry at time 0 is left out. One side of the tolerance left out means one-sided. With detectionLimit the series is separation: lists are jars, and the worst counts.',
   example: examples.drift,
   read: readSeries,
   compute: (input) => {
@@ -54,9 +54,10 @@ export const instrumentDayTopic = topic({
   name: 'instrument-day',
   says: 'Whether one instrument read high or low everywhere on one day',
   input: '{stations:[{name, temperatureC, times:[], values:[]}], at, repeatabilitySd}',
-  output: '{shift, direction:"high"|"low"|null, median, evidence:{residuals, beyondOne, coldestMean}}',
+  output:
+    '{shift, direction:"high"|"low"|null, median, evidence:{residuals:[{name, temperatureC, residual}], beyondOne, coldestMean}}',
   notes:
-    'Residuals and median in repeatability SDs; median is null with fewer than three stations that can be judged.',
+    'A shift is a median above 2.25 over at least three stations, at least three of them beyond 1 and the two coldest above 1.75 on average, all of one sign.',
   example: examples['instrument-day'],
   read: (raw) => {
     const fields = fieldsOf(raw, '', ['stations', 'at', 'repeatabilitySd'])

@@ -13,7 +13,7 @@ export const phaseFractionTopic = topic({
   input: '{lines:[{percent, density, internal}]}',
   output: '{totalPercent, internalMassPercent, internalVolumePercent, highInternalPhase}',
   notes:
-    'percent w/w, density in g/mL, internal true for the dispersed phase. highInternalPhase above 74 % v/v, the closest packing of equal spheres.',
+    'φ = Σ(w/ρ of the internal lines) / Σ(w/ρ). Drops of mixed sizes stay round above 74 %, so the threshold is customary, not sharp.',
   example: examples['phase-fraction'],
   read: (raw) => ({
     lines: list(fieldsOf(raw, '', ['lines']), 'lines', (item, path) => {
@@ -33,7 +33,8 @@ export const dropletsTopic = topic({
   says: 'Mean diameters, volume median and span of a droplet count',
   input: '{diametersUm:[], counts?:[]}',
   output: '{d10, d32, d43, d50v, span}',
-  notes: 'Micrometres; moment means in the notation of ISO 9276-2; span = (d90 − d10)/d50 by volume.',
+  notes:
+    'Moment means in the notation of ISO 9276-2. Quantiles are linear between the diameters, each standing at the middle of its own share of the volume.',
   example: examples.droplets,
   read: (raw) => {
     const fields = fieldsOf(raw, '', ['diametersUm', 'counts'])
@@ -50,7 +51,7 @@ export const centrifugeTopic = topic({
   says: 'Relative centrifugal force',
   input: '{rpm, radiusMm}',
   output: '{rcf}',
-  notes: 'RCF = 1.118·10⁻⁶ · r(mm) · rpm², in multiples of g.',
+  notes: 'RCF = 1.118·10⁻⁶ · r(mm) · rpm².',
   example: examples.centrifuge,
   read: (raw) => {
     const fields = fieldsOf(raw, '', ['rpm', 'radiusMm'])
@@ -64,8 +65,7 @@ export const settlingTopic = topic({
   says: 'Stokes velocity of a single drop',
   input: '{diameterUm, densityDifference, viscosityMPas, g?:9.80665}',
   output: '{velocityMmPerDay}',
-  notes:
-    'densityDifference: continuous minus dispersed, kg/m³; positive rises. Dilute limit only, never for a packed emulsion.',
+  notes: 'v = g·d²·Δρ/(18·η). Dilute limit only, never for a packed emulsion, where drops hold each other.',
   example: examples.settling,
   read: (raw) => {
     const fields = fieldsOf(raw, '', ['diameterUm', 'densityDifference', 'viscosityMPas', 'g'])
@@ -85,7 +85,7 @@ export const jarPlanTopic = topic({
   input:
     '{stations:[{name, timePoints:[], watchJars, measuringJarsPerPull, spares}], initialJars, retains, fillG, batchG, lossPercent}',
   output: '{jars, watchJars, measuringJars, spares, grams, fits, shortG}',
-  notes: 'grams = jars × fillG ÷ (1 − lossPercent/100); jars include the initial ones and the retains.',
+  notes: 'Every station has its own watch jars and spares, and its measuring jars at each of its times.',
   example: examples['jar-plan'],
   read: (raw) => {
     const fields = fieldsOf(raw, '', ['stations', 'initialJars', 'retains', 'fillG', 'batchG', 'lossPercent'])

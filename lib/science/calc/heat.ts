@@ -11,7 +11,7 @@ export const mktTopic = topic({
   input: '{temperaturesC:[], hoursEach?:[], deltaHkJ?:83.144}',
   output: '{mktC, meanC, minC, maxC}',
   notes:
-    'Temperatures in °C, hours each one stands for (equal without), activation enthalpy in kJ/mol. meanC is weighted as mktC is.',
+    'T = (ΔH/R) / −ln(Σ h·e^(−ΔH/(R·T)) / Σ h) in kelvin, R = 8.314462618 J/(mol·K). A time of 0 hours counts for nothing.',
   example: examples.mkt,
   read: (raw) => {
     const fields = fieldsOf(raw, '', ['temperaturesC', 'hoursEach', 'deltaHkJ'])
@@ -32,7 +32,7 @@ export const arrheniusTopic = topic({
   input: '{temperaturesC:[], rates:[], predictC?:[]}',
   output: '{eaKJ, lnA, eaSe, r2, predictions:[{temperatureC, rate, low, high}], curvature:{p, doubt}}',
   notes:
-    'Unweighted least squares of ln k on 1/T; kJ/mol; low and high are the 95 % two-sided limits of the mean. Curvature is tested from four temperatures on.',
+    'Unweighted least squares of ln k on 1/T in kelvin, R = 8.314462618 J/(mol·K). Curvature is tested from four temperatures on: a curved plot means a mechanism that changes with temperature.',
   example: examples.arrhenius,
   read: (raw) => {
     const fields = fieldsOf(raw, '', ['temperaturesC', 'rates', 'predictC'])
@@ -50,7 +50,7 @@ export const acceleratedAgeTopic = topic({
   says: 'Months at an accelerated temperature that stand for a time in storage, by Q10',
   input: '{storageC, acceleratedC, q10, targetMonths}',
   output: '{factor, acceleratedMonths}',
-  notes: 'factor = q10^((acceleratedC − storageC)/10). An assumption, never evidence.',
+  notes: 'An assumption, never evidence.',
   example: examples['accelerated-age'],
   read: (raw) => {
     const fields = fieldsOf(raw, '', ['storageC', 'acceleratedC', 'q10', 'targetMonths'])

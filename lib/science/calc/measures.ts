@@ -13,7 +13,7 @@ export const viscosityTopic = topic({
   input: '{torquePercent, factor} or {torquePercent, spindleConstant, rpm}, bandPercent?',
   output: '{mPas, fullScalemPas, errorPercent, doubt}',
   notes:
-    'factor in mPa·s per % torque = spindleConstant ÷ rpm. doubt is null, or why: torque outside 10 to 100 %, or, where bandPercent (distance to the nearer edge in % of the value) is given, an error above a third of it.',
+    'factor = spindleConstant ÷ rpm. ISO 2555 describes the single-cylinder method and does not cover T-bars [memory].',
   example: examples.viscosity,
   read: (raw) => {
     const fields = fieldsOf(raw, '', ['torquePercent', 'factor', 'spindleConstant', 'rpm', 'bandPercent'])
@@ -37,7 +37,7 @@ export const phSlopeTopic = topic({
   input: '{points:[{bufferPh, mV}], temperatureC}',
   output: '{slopeMvPerPh, offsetMv, efficiencyPercent, doubt}',
   notes:
-    'Least squares through two points or more; offsetMv is the potential at pH 7; a doubt outside 95 to 105 % of 2.302585·R·T/F.',
+    'Least squares of mV on pH through two points or more. The limits of the doubt are practice; USP <791> allows 90 to 105 %.',
   example: examples['ph-slope'],
   read: (raw) => {
     const fields = fieldsOf(raw, '', ['points', 'temperatureC'])
@@ -57,7 +57,7 @@ export const bufferPhTopic = topic({
   says: 'pH of a standard buffer at a temperature',
   input: '{buffer:"phthalate"|"phosphate"|"borax", temperatureC}',
   output: '{ph}',
-  notes: 'NBS/IUPAC tables, linear between them, 0 to 60 °C only.',
+  notes: 'NBS/IUPAC tables every 5 °C. Bought buffers carry the table of their own certificate instead.',
   example: examples['buffer-ph'],
   read: (raw) => {
     const fields = fieldsOf(raw, '', ['buffer', 'temperatureC'])
@@ -74,7 +74,7 @@ export const separationTopic = topic({
   says: 'Separation in % of fill height from layer heights',
   input: '{totalMm, topMm, bottomMm}',
   output: '{topPercent, bottomPercent, percent}',
-  notes: 'Heights in mm: the fill, free oil on top, water or serum below. A cream layer does not count.',
+  notes: 'A cream layer does not count. Heights may be in any one unit.',
   example: examples.separation,
   read: (raw) => {
     const fields = fieldsOf(raw, '', ['totalMm', 'topMm', 'bottomMm'])

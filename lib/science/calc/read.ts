@@ -15,7 +15,10 @@ export function fieldsOf(raw: unknown, path: string, known: readonly string[]): 
   }
   for (const key of Object.keys(raw)) {
     if (!known.includes(key)) {
-      throw new ScienceError(join(path, key), `is not a field here; known are ${known.join(', ')}`)
+      throw new ScienceError(
+        join(path, /^\w{1,30}$/.test(key) ? key : quoted(key)),
+        `is not a field here; known are ${known.join(', ')}`,
+      )
     }
   }
   return { path, values: raw as Record<string, unknown> }
@@ -52,7 +55,10 @@ export function choice<T extends string>(fields: Fields, key: string, allowed: r
   const value = text(fields, key)
   const found = allowed.find((option) => option === value)
   if (found === undefined) {
-    throw new ScienceError(join(fields.path, key), `must be one of ${allowed.join(', ')}, not "${value}"`)
+    throw new ScienceError(
+      join(fields.path, key),
+      `must be one of ${allowed.join(', ')}, not ${quoted(value)}`,
+    )
   }
   return found
 }
@@ -121,8 +127,11 @@ function join(path: string, key: string): string {
 function kindOf(raw: unknown): string {
   if (raw === null) return 'null'
   if (Array.isArray(raw)) return 'a list'
-  if (typeof raw === 'string')
-    return `the text ${JSON.stringify(raw.length > 30 ? `${raw.slice(0, 30)}…` : raw)}`
+  if (typeof raw === 'string') return `the text ${quoted(raw)}`
   if (typeof raw === 'object') return 'an object'
   return String(raw)
+}
+
+function quoted(raw: string): string {
+  return JSON.stringify(raw.length > 30 ? `${raw.slice(0, 30)}…` : raw)
 }

@@ -9,7 +9,7 @@ export const separationCurveTopic = topic({
   input: '{t:[], percent:[], detectPercent?:1}',
   output: '{onset, rate, plateau, residualSd, model:"none"|"linear"|"first order after a lag"}',
   notes:
-    'onset, rate and plateau are null where there is none. rate is in points per unit of t when separation begins; onset is the first lasting crossing of detectPercent, interpolated.',
+    'Nothing above detectPercent; or a straight line from where it begins; or S∞(1 − e^(−k(t − t₀))) after a lag, where that fits significantly better (F test at 0.05, from five times on).',
   example: examples['separation-curve'],
   read: (raw) => {
     const fields = fieldsOf(raw, '', ['t', 'percent', 'detectPercent'])

@@ -25,8 +25,7 @@ export const regressionTopic = topic({
   input: '{x:[], y:[], confidence?:0.95, at?:[x…]}',
   output:
     '{n, slope, intercept, slopeSe, interceptSe, residualSd, r2, df, slopeP, predictions:[{x, mean, meanLow, meanHigh, newLow, newHigh}]}',
-  notes:
-    'Needs three points. slopeP and all limits are two-sided; r2 is null where y is constant, slopeP without residual variation.',
+  notes: 'Ordinary least squares, centred; checked against NIST StRD Norris. All limits are two-sided.',
   example: examples.regression,
   read: (raw) => {
     const fields = fieldsOf(raw, '', ['x', 'y', 'confidence', 'at'])
@@ -47,7 +46,7 @@ export const shelfLifeTopic = topic({
   output:
     '{model:"common line"|"common slope"|"separate lines", tests:[{name:"slopes"|"intercepts", F, df1, df2, p, pooled}], batches:[{name, slope, intercept, residualSd, df, crossing, side}], crossing, limitingBatch}',
   notes:
-    't and horizon in one unit of time, each y one observation. Bound one-sided for decreasing (lower limit) and increasing (upper), two-sided for either. A crossing is null where the bound stays inside up to the horizon, 0 where it is outside at time 0; limitingBatch is null where all batches share one line.',
+    'Slopes are pooled by an F test, then intercepts by one on the refitted common-slope model; with separate lines the error is pooled over batches. The crossing is in closed form.',
   example: examples['shelf-life'],
   read: (raw) => {
     const fields = fieldsOf(raw, '', [
@@ -83,7 +82,7 @@ export const extrapolationCapTopic = topic({
     '{dataMonths, storage:"room"|"refrigerated"|"frozen", acceleratedChange, intermediateChange?, variable, statistics}',
   output: '{capMonths, rule}',
   notes:
-    'The four answers are true or false. Never rounded; capMonths equals dataMonths where nothing may be extrapolated. The months are seen in quotation, the factors 2X and 1.5X from memory.',
+    'capMonths equals dataMonths where nothing may be extrapolated. The months are seen in quotation, the factors 2X and 1.5X from memory.',
   example: examples['extrapolation-cap'],
   read: (raw) => {
     const fields = fieldsOf(raw, '', [
@@ -111,7 +110,7 @@ export const outlierTopic = topic({
   says: "Grubbs' test for one outlier, two-sided",
   input: '{values:[], alpha?:0.05}',
   output: '{g, critical, index, outlier}',
-  notes: 'Needs three values. index counts from 0; g is null where all values are equal.',
+  notes: "Critical value (n − 1)/√n · √(t²/(n − 2 + t²)), t the upper alpha/(2n) quantile of Student's t.",
   example: examples.outlier,
   read: (raw) => {
     const fields = fieldsOf(raw, '', ['values', 'alpha'])
