@@ -1,6 +1,5 @@
 import { Figure } from '@/components/marks/figure'
 import { regressionKeyShapes, regressionShapes } from '@/components/shelf-case/regression-shapes'
-import { figure, grouped } from '@/lib/report/rules'
 import type { Computed } from '@/lib/shelf-case/rules/build'
 import type { AttributeEvidence } from '@/lib/shelf-case/rules/content'
 import { regressionView } from '@/lib/shelf-case/rules/plot'
@@ -19,13 +18,7 @@ export function RegressionPlot({
 }) {
   const view = regressionView(evidence, 60)
   if (!view || !evidence.calc) return null
-  const isPercent = view.unit.startsWith('%')
-  const label = (y: number) =>
-    isPercent
-      ? y.toFixed(0).replace('-', '\u2212')
-      : evidence.attribute === 'viscosity'
-        ? grouped(String(Number(y.toPrecision(3))))
-        : figure(evidence.attribute, y)
+  const { label } = view
   const crossing = evidence.crossingMonths
   return (
     <section className="min-w-0">

@@ -1,7 +1,7 @@
 'use client'
 
 import { useRef, useState, type FormEvent } from 'react'
-import { ContentHash } from '@/components/shelf-case/signature-box'
+import { ContentHash, Recheck } from '@/components/shelf-case/signature-box'
 import { Button } from '@/components/ui/button'
 import { ErrorNote } from '@/components/ui/error-note'
 import { Field } from '@/components/ui/field'
@@ -125,6 +125,7 @@ export function SignPanel({ detail, whyNot, demoPassword, onDone }: Props) {
         </div>
       )}
       <ContentHash sha256={detail.contentSha256 ?? ''} />
+      <Recheck code={detail.code} />
     </form>
   )
 }

@@ -32,6 +32,7 @@ export function SignatureBox({ detail, zone }: { detail: CaseDetail; zone: strin
         </p>
       ) : null}
       <ContentHash sha256={detail.contentSha256 ?? ''} />
+      <Recheck code={detail.code} />
       {detail.state === 'signed' || detail.state === 'superseded' ? (
         <div className="mt-4">
           <LinkButton kind="primary" href={`/api/cases/${detail.code}/report`} prefetch={false}>
@@ -57,5 +58,18 @@ export function ContentHash({ sha256 }: { sha256: string }) {
         ))}
       </p>
     </div>
+  )
+}
+
+/** How anyone makes the figures again, outside the application. */
+export function Recheck({ code }: { code: string }) {
+  return (
+    <p className="mt-2 text-13 text-soft">
+      <a className="underline underline-offset-4" href={`/api/cases/${code}/content`} download>
+        Download the frozen content
+      </a>{' '}
+      and run <span className="font-mono">npm run --silent recheck -- case-{code}.json</span>: it computes
+      every figure again.
+    </p>
   )
 }

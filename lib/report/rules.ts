@@ -31,9 +31,8 @@ export function grouped(value: string): string {
 
 /** pH 2 decimals, viscosity 3 significant figures, percent 1 decimal. */
 export function figure(attribute: string, value: number): string {
-  if (attribute === 'ph') return value.toFixed(2)
   if (attribute === 'viscosity') return grouped(String(Number(value.toPrecision(3))))
-  return value.toFixed(1).replace(/^-/, '\u2212')
+  return value.toFixed(attribute === 'ph' ? 2 : 1).replace(/^-/, '\u2212')
 }
 
 export function weekText(weeks: number): string {

@@ -15,6 +15,11 @@ export async function fillCases(
   filling: Filling,
   { finished, waiting }: { finished: Study; waiting: Study },
 ) {
+  await signFinished(filling, finished)
+  await putForward(filling, waiting, 4)
+}
+
+export async function signFinished(filling: Filling, finished: Study): Promise<void> {
   const { liv, rune } = filling.people
   const signed = await putForward(filling, finished, 30)
   await filling.act(rune, daysAgo(filling, 28, 16, 42), (trx) =>
@@ -44,7 +49,6 @@ export async function fillCases(
       now,
     ),
   )
-  await putForward(filling, waiting, 4)
 }
 
 async function putForward(filling: Filling, study: Study, days: number) {

@@ -4,7 +4,6 @@ import { moveShapes } from '@/components/marks/place'
 import { regressionKeyShapes, regressionShapes } from '@/components/shelf-case/regression-shapes'
 import { text } from '@/lib/report/document/fonts'
 import { style } from '@/lib/report/document/page-frame'
-import { figure, grouped } from '@/lib/report/rules'
 import type { AttributeEvidence, CaseContent } from '@/lib/shelf-case/rules/content'
 import { regressionView } from '@/lib/shelf-case/rules/plot'
 
@@ -30,7 +29,7 @@ export function Curve({
 }) {
   const view = regressionView(a, 60)
   if (!view || !a.calc) return null
-  const isPercent = view.unit.startsWith('%')
+  const { label } = view
   const size = { width: 700, height }
   const shapes = regressionShapes({
     ...size,
@@ -48,13 +47,6 @@ export function Curve({
     decides: a.decidedBy,
     format: label,
   })
-  function label(y: number): string {
-    return isPercent
-      ? y.toFixed(0)
-      : a.attribute === 'viscosity'
-        ? grouped(y.toPrecision(3))
-        : figure(a.attribute, y)
-  }
   const scale = sheetWidth / size.width
   return (
     <View wrap={false} style={{ marginTop: 2 }}>

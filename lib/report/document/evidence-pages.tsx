@@ -20,13 +20,21 @@ export function EvidencePages({ content }: { content: CaseContent }) {
           : ''}
       </Text>
       <StatisticsTable content={content} />
+      {content.format === 'stillstand-case-1' ? null : (
+        <Text style={[style.soft, { marginTop: 4 }]}>
+          The frozen content holds the exact input of every figure. It is downloaded from the case’s page; npm
+          run recheck -- case-{content.case.code}.json computes all of them again.
+        </Text>
+      )}
       {curves
         .filter((a) => a !== firstCurve(content))
         .map((a) => (
           <Curve key={a.attribute} a={a} content={content} />
         ))}
-      <Text style={style.h2}>Temperature of {content.station.name}</Text>
-      <Text>{temperatureText(content)}</Text>
+      <View wrap={false}>
+        <Text style={style.h2}>Temperature of {content.station.name}</Text>
+        <Text>{temperatureText(content)}</Text>
+      </View>
       <Text style={style.h2}>What weakens it</Text>
       {content.weakens.length === 0 ? <Text>Nothing was noted.</Text> : null}
       {content.weakens.map((w, i) => (

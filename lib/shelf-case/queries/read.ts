@@ -108,6 +108,19 @@ export async function getCase(db: Db | Trx, actor: Actor, code: string) {
   }
 }
 
+/** The content's very bytes, of whatever case the actor may see that was put forward. */
+export async function getFrozenContent(db: Db | Trx, actor: Actor, code: string): Promise<string> {
+  const { id, state } = await getCase(db, actor, code)
+  const { content } = await db
+    .selectFrom('shelfCase')
+    .select('content')
+    .where('id', '=', id)
+    .executeTakeFirstOrThrow()
+  if (content === null)
+    throw refuse.conflict(`Case ${code} is ${state}. Its content is frozen when it is put forward.`)
+  return content
+}
+
 /** A signature belongs to a content if both its own hash and the content's hash can be made again. */
 export function signatureBelongs(
   signature: SignedFacts & { signatureSha256: string },

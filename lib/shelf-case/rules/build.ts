@@ -1,16 +1,11 @@
 import { extrapolationCap } from '@/lib/science/extrapolation-cap'
 import { nominalMonths } from '@/lib/science/months'
-import { separation } from '@/lib/science/separation'
+import type { SeriesPoint } from '@/lib/science/series'
 import { protocolPlan } from '@/lib/protocol/schema'
 import type { CaseProposal } from '@/lib/shelf-case/schema'
 import { attributeEvidence, type BatchSeries } from '@/lib/shelf-case/rules/attribute'
-import type {
-  AttributeEvidence,
-  CaseContent,
-  ReadingEvidence,
-  ShelfEvidence,
-} from '@/lib/shelf-case/rules/content'
-import { driftCalculation } from '@/lib/shelf-case/rules/drift-calculation'
+import type { AttributeEvidence, CaseContent, ReadingEvidence } from '@/lib/shelf-case/rules/content'
+import { rowsOf, shelvesOf } from '@/lib/shelf-case/rules/shelves'
 import { temperatureRecord } from '@/lib/shelf-case/rules/temperature'
 import { weaknesses } from '@/lib/shelf-case/rules/weakness'
 import type { Evidence } from '@/lib/shelf-case/queries/evidence'
@@ -46,15 +41,8 @@ export function computeCase(
   const superseded = new Set(evidence.readings.flatMap((r) => (r.supersedesId ? [r.supersedesId] : [])))
   const standing = evidence.readings.filter((r) => !r.isVoid && !superseded.has(r.id))
   const atStation = evidence.series.filter((s) => s.studyStationId === station.id)
-  const dataMonths = Math.min(
-    ...evidence.batches.map((b) =>
-      Math.max(
-        0,
-        ...atStation
-          .filter((s) => s.batchId === b.id)
-          .flatMap((s) => s.finding.points.filter((p) => p.counted).map((p) => nominalMonths(p.time))),
-      ),
-    ),
+  const dataMonths = reachedMonths(
+    evidence.batches.map((b) => atStation.filter((s) => s.batchId === b.id).flatMap((s) => s.finding.points)),
   )
   const cap = capOf(evidence, station, dataMonths)
   const batchSeries = (attribute: string): BatchSeries[] =>
@@ -86,10 +74,7 @@ export function computeCase(
     .map(({ planned, series }) => attributeEvidence(planned, series, cap.output.capMonths))
     // What statistics carry first, then what was only seen to pass.
     .toSorted((a, b) => Number(b.basis === 'regression') - Number(a.basis === 'regression'))
-  const limiting = attributes.reduce<AttributeEvidence | null>(
-    (least, a) => (least === null || a.supportedMonths < least.supportedMonths ? a : least),
-    null,
-  )
+  const limiting = limitingOf(attributes)
   const record = temperatureRecord(station, temperatures)
   const missing = evidence.missed.map((m) => ({
     jar: m.jar,
@@ -133,6 +118,23 @@ export function computeCase(
   }
 }
 
+/** Months to which every batch was read at the station: the least of their latest counted times. */
+export function reachedMonths(batches: Pick<SeriesPoint, 'counted' | 'time'>[][]): number {
+  return Math.min(
+    ...batches.map((points) =>
+      Math.max(0, ...points.filter((p) => p.counted).map((p) => nominalMonths(p.time))),
+    ),
+  )
+}
+
+/** The attribute that supports the least; the first of several. */
+export function limitingOf<T extends Pick<AttributeEvidence, 'supportedMonths'>>(attributes: T[]): T | null {
+  return attributes.reduce<T | null>(
+    (least, a) => (least === null || a.supportedMonths < least.supportedMonths ? a : least),
+    null,
+  )
+}
+
 function timePointsOf(plan: ReturnType<typeof protocolPlan.parse>, station: Evidence['stations'][number]) {
   const planned = plan.stations.find(
     (s) => (s.kind === 'freeze-thaw') === station.isFreezeThaw && s.temperatureC === station.temperatureC,
@@ -174,47 +176,6 @@ function capOf(evidence: Evidence, station: Evidence['stations'][number], dataMo
     ? 'Six months at 40 °C without significant change are not shown.'
     : 'Six months at 40 °C without significant change.'
   return { topic: 'extrapolation-cap' as const, input, output: extrapolationCap(input), why }
-}
-
-function shelvesOf(evidence: Evidence): ShelfEvidence[] {
-  return evidence.stations.flatMap((s) =>
-    evidence.batches.flatMap((b) => {
-      const found = evidence.series.find(
-        (x) => x.studyStationId === s.id && x.batchId === b.id && x.attribute === 'separation',
-      )
-      if (!found) return []
-      return {
-        label: s.isFreezeThaw ? 'freeze-thaw' : `${s.temperatureC}`,
-        temperatureC: s.temperatureC,
-        isFreezeThaw: s.isFreezeThaw,
-        voice: s.voice,
-        batch: b.code,
-        jars: found.finding.points.map((p) => ({
-          months: nominalMonths(p.time),
-          ...layersOf(evidence.readings.filter((r) => rowsOf(found, p.readingIds).includes(r.id))),
-          percent: p.mean,
-          standing: p.standing,
-        })),
-        calc: driftCalculation(found.input),
-      }
-    }),
-  )
-}
-
-/** The layers of the worst jar of a pull, as they are drawn. */
-function layersOf(readings: Evidence['readings']) {
-  const worst = readings.toSorted((x, y) => (y.value ?? 0) - (x.value ?? 0))[0]
-  const mm = (key: string) => (typeof worst?.detail[key] === 'number' ? (worst.detail[key] as number) : 0)
-  const input = { totalMm: mm('totalMm'), topMm: mm('topMm'), bottomMm: mm('bottomMm') }
-  if (input.totalMm <= 0) return { topPercent: 0, bottomPercent: worst?.value ?? 0, calc: null }
-  const output = separation(input)
-  const { topPercent, bottomPercent } = output
-  return { topPercent, bottomPercent, calc: { topic: 'separation' as const, input, output } }
-}
-
-/** Rows of the record behind the readings that the rules name. */
-function rowsOf({ rowIds }: Evidence['series'][number], ids: string[]): string[] {
-  return ids.flatMap((id) => rowIds.get(id) ?? [id])
 }
 
 function readingTable(

@@ -1,8 +1,9 @@
-import { driftTopic } from '@/lib/science/calc/drift'
+import { driftTopic, readSeries } from '@/lib/science/calc/drift'
+import { assessSeries } from '@/lib/science/drift'
 import { ScienceError } from '@/lib/science/guard'
 import { mean } from '@/lib/science/mean'
 import { isUsable, pullDays, type PullDay } from '@/lib/science/pull-day'
-import type { SeriesInput } from '@/lib/science/series'
+import type { SeriesFinding, SeriesInput } from '@/lib/science/series'
 import type { DriftCalculation, DriftInput } from '@/lib/shelf-case/rules/content'
 
 /**
@@ -33,6 +34,11 @@ export function driftCalculation(series: SeriesInput): DriftCalculation | null {
     if (error instanceof ScienceError) return null
     throw error
   }
+}
+
+/** The whole finding of a frozen series, as `drift` comes to it, with each day's mean and standing. */
+export function findingOf(input: DriftInput): SeriesFinding {
+  return assessSeries(readSeries(input))
 }
 
 function entriesOf(day: PullDay, isSeparation: boolean): { time: number; values: number[] }[] {

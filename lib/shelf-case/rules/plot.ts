@@ -1,3 +1,4 @@
+import { figure } from '@/lib/report/rules'
 import { shelfLifeLines } from '@/lib/science/shelf-life-lines'
 import { fromScale } from '@/lib/science/shelf-life-scale'
 import type { AttributeEvidence } from '@/lib/shelf-case/rules/content'
@@ -7,6 +8,8 @@ export type RegressionView = {
   unit: string
   lower: number | null
   upper: number | null
+  /** A value of the axis as it is written. */
+  label: (y: number) => string
   batches: { name: string; t: number[]; y: number[]; line: Sample[]; bound: Sample[] }[]
 }
 type Sample = { t: number; y: number }
@@ -25,7 +28,9 @@ export function regressionView(evidence: AttributeEvidence, upTo: number): Regre
   const deciding = output.limitingBatch ?? input.batches[0]?.name
   const samples = (values: number[] | undefined) =>
     (values ?? []).map((y, i): Sample => ({ t: at[i] ?? 0, y: back(y) }))
+  const label = (y: number) => (scale === 'log share' ? y.toFixed(0) : figure(evidence.attribute, y))
   return {
+    label,
     unit: scale === 'log share' ? '% of each batch’s own initial' : evidence.unit,
     lower: input.limit.lower === undefined ? null : back(input.limit.lower),
     upper: input.limit.upper === undefined ? null : back(input.limit.upper),
