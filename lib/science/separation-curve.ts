@@ -1,6 +1,6 @@
-import { levenbergMarquardt } from 'ml-levenberg-marquardt'
 import { fUpperTail } from './distributions'
 import { assertComputable, assertNumbers, assertPositive, assertSameLength, ScienceError } from './guard'
+import { fitFirstOrderLag } from './first-order-lag'
 import { fitHinge } from './hinge'
 
 export type SeparationCurveInput = { t: number[]; percent: number[]; detectPercent?: number }
@@ -41,7 +41,7 @@ export function separationCurve({ t, percent, detectPercent = 1 }: SeparationCur
     return assertComputable('percent', { onset: null, rate: null, plateau: null, residualSd, model: 'none' })
   }
   const line = fitHinge(x, y)
-  const curve = new Set(x).size >= 5 ? fitFirstOrder(x, y, line.start) : null
+  const curve = new Set(x).size >= 5 ? fitFirstOrderLag(x, y, line.start) : null
   if (curve && isBetter(curve.squares, line.squares, x.length - 3)) {
     return assertComputable('percent', {
       onset,
@@ -72,90 +72,4 @@ function isBetter(squares: number, lineSquares: number, df: number): boolean {
   if (df < 1 || squares >= lineSquares) return false
   if (squares === 0) return true
   return fUpperTail(((lineSquares - squares) * df) / squares, 1, df) < 0.05
-}
-
-type FirstOrder = { plateau: number; k: number; start: number; squares: number }
-
-/**
- * Best of a grid over lag and rate constant, the plateau being linear in them; then polished together. Time is
- * counted in shares of its range, so that units do not matter.
- */
-function fitFirstOrder(x: readonly number[], y: readonly number[], lineStart: number): FirstOrder | null {
-  const range = x[x.length - 1]! - x[0]!
-  const share = x.map((time) => (time - x[0]!) / range)
-  let best: FirstOrder | null = null
-  const starts = [(lineStart - x[0]!) / range, ...Array.from({ length: 40 }, (_, i) => i / 40)]
-  for (const start of starts) {
-    for (let step = 0; step <= 24; step++) {
-      const found = withPlateau(share, y, 0.1 * 10 ** (step / 8), start)
-      if (found && found.squares < (best?.squares ?? Infinity)) best = found
-    }
-  }
-  if (best === null) return null
-  const polished = polish(share, y, best)
-  const { plateau, k, start, squares } =
-    polished && polished.squares < best.squares && isInJar(polished) ? polished : best
-  return { plateau, k: k / range, start: x[0]! + start * range, squares }
-}
-
-function withPlateau(
-  x: readonly number[],
-  y: readonly number[],
-  k: number,
-  start: number,
-): FirstOrder | null {
-  let shapeSquares = 0
-  let product = 0
-  x.forEach((time, i) => {
-    const shape = shapeAt(time, k, start)
-    shapeSquares += shape * shape
-    product += shape * y[i]!
-  })
-  if (shapeSquares === 0) return null
-  const plateau = product / shapeSquares
-  const found = { plateau, k, start, squares: squaresOf(x, y, plateau, k, start) }
-  return isInJar(found) ? found : null
-}
-
-/** null where the curve cannot tell its parameters apart: then the grid's best stands. */
-function polish(x: readonly number[], y: readonly number[], from: FirstOrder): FirstOrder | null {
-  try {
-    const { parameterValues } = levenbergMarquardt(
-      { x: [...x], y: [...y] },
-      ([plateau = 0, k = 0, start = 0]) =>
-        (time) =>
-          plateau * shapeAt(time, k, start),
-      {
-        initialValues: [from.plateau, from.k, from.start],
-        gradientDifference: [1e-6 * from.plateau, 1e-6 * from.k, 1e-6],
-        centralDifference: true,
-        maxIterations: 300,
-        errorTolerance: 1e-12,
-      },
-    )
-    const [plateau = NaN, k = NaN, start = NaN] = parameterValues
-    return { plateau, k, start, squares: squaresOf(x, y, plateau, k, start) }
-  } catch (error) {
-    // The package throws plain errors on a singular or lopsided normal matrix.
-    if (error instanceof Error) return null
-    throw error
-  }
-}
-
-function isInJar({ plateau, k }: FirstOrder): boolean {
-  return plateau > 0 && plateau <= 100 && k > 0
-}
-
-function squaresOf(
-  x: readonly number[],
-  y: readonly number[],
-  plateau: number,
-  k: number,
-  start: number,
-): number {
-  return x.reduce((sum, time, i) => sum + (y[i]! - plateau * shapeAt(time, k, start)) ** 2, 0)
-}
-
-function shapeAt(time: number, k: number, start: number): number {
-  return time > start ? -Math.expm1(-k * (time - start)) : 0
 }

@@ -220,9 +220,9 @@ export const examples = {
     },
     output: {
       onset: 4.043478260869565,
-      rate: 2.577476942318868,
-      plateau: 16.026330314406625,
-      residualSd: 0.0921594628901342,
+      rate: 2.577477202935123,
+      plateau: 16.026328574076622,
+      residualSd: 0.0921594628900534,
       model: 'first order after a lag',
     },
   },
