@@ -22,10 +22,12 @@ export type CurvesProps = CurveTime & {
   stickyTop?: number
   /** Drawn between ruler and plots on the same scale: the photo strip. */
   strip?: (scale: TimeScale, width: number) => ReactNode
+  /** Puts a control about a series' name beside its plot: what it is computed from. */
+  nameAs?: (input: CurveInput, series: CurveSeries, name: ReactNode) => ReactNode
 }
 
 /** The attributes of a study under one ruler, each with its band, trends and forecasts. */
-export function Curves({ plots, heights, strip, stickyTop = 0, ...time }: CurvesProps) {
+export function Curves({ plots, heights, strip, nameAs, stickyTop = 0, ...time }: CurvesProps) {
   const [box, width] = useWidth<HTMLDivElement>(1360)
   const isNarrow = width < 760
   const zero = isNarrow ? 56 : 196
@@ -55,6 +57,7 @@ export function Curves({ plots, heights, strip, stickyTop = 0, ...time }: Curves
           scale={scale}
           height={heights?.[index] ?? (index === 0 ? 266 : 224)}
           isNarrow={isNarrow}
+          nameAs={nameAs}
         />
       ))}
     </div>
@@ -68,6 +71,7 @@ function Plot({
   scale,
   height,
   isNarrow,
+  nameAs,
 }: {
   input: CurveInput
   time: CurveTime
@@ -75,6 +79,7 @@ function Plot({
   scale: TimeScale
   height: number
   isNarrow: boolean
+  nameAs: CurvesProps['nameAs']
 }) {
   const [isTable, setIsTable] = useState(false)
   const hasTag = input.series.some(({ leaves }) => leaves)
@@ -93,7 +98,12 @@ function Plot({
         {isNarrow && input.band ? <p className="text-14 font-600 text-alarm">{input.band.text}</p> : null}
         <ul className={isNarrow ? 'mt-1 flex flex-wrap gap-x-5' : 'mt-2'}>
           {input.series.map((series, index) => (
-            <Key key={series.id} series={series} index={index} />
+            <Key
+              key={series.id}
+              series={series}
+              index={index}
+              nameAs={(name) => (nameAs ? nameAs(input, series, name) : name)}
+            />
           ))}
         </ul>
         <button
@@ -126,7 +136,9 @@ function Plot({
   )
 }
 
-function Key({ series, index }: { series: CurveSeries; index: number }) {
+type KeyProps = { series: CurveSeries; index: number; nameAs: (name: ReactNode) => ReactNode }
+
+function Key({ series, index, nameAs }: KeyProps) {
   const role = colourRole(series)
   return (
     <li className="flex h-[30px] items-center gap-2.5 text-17 whitespace-nowrap">
@@ -148,7 +160,7 @@ function Key({ series, index }: { series: CurveSeries; index: number }) {
         />
       </svg>
       <span style={{ fontWeight: series.kind === 'batch' ? 600 : heatWeight(series.temperatureC) }}>
-        {curveName(series)}
+        {nameAs(curveName(series))}
       </span>
       <StandingMark standing={series.standing} size={16} title={series.standing} className="ml-auto" />
     </li>

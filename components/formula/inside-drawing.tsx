@@ -3,19 +3,22 @@ import { PhiRuler } from '@/components/charts/phi-ruler'
 import type { FormulaPage } from '@/lib/formula/queries/get-formula'
 import type { FormulaCheck } from '@/lib/formula/rules/checks'
 import { innerWord } from '@/lib/formula/rules/finding'
-import { formulaTotals, type FormulaTotals } from '@/lib/formula/rules/totals'
+import { formulaTotals, type Amounts, type FormulaTotals } from '@/lib/formula/rules/totals'
 import type { EmulsionType } from '@/lib/formula/schema'
+import { FigureDetails } from '@/components/ui/figure-details'
 import { Checks } from './checks'
+import { highInternalFacts, insideFacts } from './formula-facts'
 
 type Props = {
   totals: FormulaTotals
+  amounts: readonly Amounts[]
   before: FormulaPage['before']
   checks: FormulaCheck[]
   emulsionType: EmulsionType
 }
 
 /** What is inside: the level, a cut through the emulsion to scale, and the questions that point into it. */
-export function InsideDrawing({ totals, before, checks, emulsionType }: Props) {
+export function InsideDrawing({ totals, amounts, before, checks, emulsionType }: Props) {
   const { internalVolumePercent: volume, internalMassPercent: mass } = totals
   if (volume === null || mass === null) {
     return (
@@ -32,6 +35,25 @@ export function InsideDrawing({ totals, before, checks, emulsionType }: Props) {
   const was = before ? formulaTotals(before.lines).internalVolumePercent : null
   return (
     <div className="min-w-0">
+      <p className="mb-2 text-15">
+        Inside:{' '}
+        <FigureDetails
+          figure={`${volume.toFixed(1)} %`}
+          facts={() => insideFacts(amounts, totals, 'volume')}
+          className="font-650"
+        />{' '}
+        by volume,{' '}
+        <FigureDetails
+          figure={`${mass.toFixed(1)} %`}
+          facts={() => insideFacts(amounts, totals, 'mass')}
+          className="font-650"
+        />{' '}
+        by mass;{' '}
+        <FigureDetails
+          figure={totals.isHighInternalPhase ? 'a high internal phase' : 'no high internal phase'}
+          facts={() => highInternalFacts(amounts, totals)}
+        />
+      </p>
       <PhiRuler
         phi={volume / 100}
         before={
@@ -46,7 +68,7 @@ export function InsideDrawing({ totals, before, checks, emulsionType }: Props) {
           inside={innerWord(emulsionType)}
           dropMicrometres={null}
           height={Math.max(494, pointing.length * 126)}
-          note={`By mass it is ${mass.toFixed(1)} %. The size of the drops has not been measured.`}
+          note="The size of the drops has not been measured."
           questions={pointing.map((check) => ({
             id: check.key,
             title: check.question,

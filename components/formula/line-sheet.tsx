@@ -8,6 +8,7 @@ import { readPastedLines } from '@/lib/formula/rules/paste'
 import { isBlankLine, remainderOf, type TypedLine } from '@/lib/formula/rules/typed'
 import type { PhaseTotal } from '@/lib/formula/rules/totals'
 import type { EmulsionType } from '@/lib/formula/schema'
+import type { FigureFacts } from '@/lib/science/methods/method'
 import type { IngredientRow } from '@/lib/ingredient/queries'
 import { Button } from '@/components/ui/button'
 import { addToIngredients, filledFrom, linesFromPaste } from './fill-line'
@@ -20,6 +21,7 @@ type Props = {
   lines: TypedLine[]
   emulsionType: EmulsionType
   phases: PhaseTotal[]
+  factsOfPhase: (total: PhaseTotal) => FigureFacts
   problems: Problems
   /** Share in the version before by INCI name; null without one. */
   before: Map<string, string> | null
@@ -33,6 +35,7 @@ export function LineSheet({
   lines,
   emulsionType,
   phases,
+  factsOfPhase,
   problems,
   before,
   onLines,
@@ -161,6 +164,7 @@ export function LineSheet({
                 total={phases.find((one) => one.phase === phase)}
                 isInternal={lines.some((line) => line.phase === phase && line.isInternal)}
                 emulsionType={emulsionType}
+                factsOfPhase={factsOfPhase}
                 onAdd={() => addLine(phase)}
               />
               {lines

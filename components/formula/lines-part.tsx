@@ -13,6 +13,7 @@ import { InsideDrawing } from './inside-drawing'
 import { LineSheet } from './line-sheet'
 import { ReadSheet } from './read-sheet'
 import { ApartJar } from './apart-jar'
+import { phaseFacts } from './formula-facts'
 import { TotalRow } from './total-row'
 import { useRowMiddles } from './use-row-middles'
 import type { DraftHandle } from './use-draft'
@@ -32,7 +33,9 @@ export function LinesPart({ formula, handle, isOpen, totals, phases, checks, bef
   const { draft, amounts, problems, change } = handle
   const [problem, setProblem] = useState('')
   const sheet = useRef<HTMLDivElement>(null)
-  const foot = <TotalRow totals={totals} beforeNumber={before ? (formula.before?.number ?? null) : null} />
+  const beforeNumber = before ? (formula.before?.number ?? null) : null
+  const foot = <TotalRow totals={totals} amounts={amounts} beforeNumber={beforeNumber} />
+  const factsOfPhase = (total: PhaseTotal) => phaseFacts(amounts, total)
   const lines = draft.lines.length ? draft.lines : [emptyLine(formula.versionId, 'A', false)]
   const middles = useRowMiddles(sheet, lines.map((line) => line.id).join())
   return (
@@ -46,6 +49,7 @@ export function LinesPart({ formula, handle, isOpen, totals, phases, checks, bef
                 lines={lines}
                 emulsionType={draft.emulsionType}
                 phases={phases}
+                factsOfPhase={factsOfPhase}
                 problems={problems}
                 before={before}
                 onLines={(next) => change({ lines: next })}
@@ -58,12 +62,19 @@ export function LinesPart({ formula, handle, isOpen, totals, phases, checks, bef
               <Facts handle={handle} />
             </>
           ) : (
-            <ReadSheet lines={formula.lines} phases={phases} emulsionType={draft.emulsionType} foot={foot} />
+            <ReadSheet
+              lines={formula.lines}
+              phases={phases}
+              emulsionType={draft.emulsionType}
+              factsOfPhase={factsOfPhase}
+              foot={foot}
+            />
           )}
         </div>
       </div>
       <InsideDrawing
         totals={totals}
+        amounts={amounts}
         before={formula.before}
         checks={checks}
         emulsionType={draft.emulsionType}

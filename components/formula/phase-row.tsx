@@ -2,17 +2,20 @@ import { innerWord } from '@/lib/formula/rules/finding'
 import { percentText } from '@/lib/formula/rules/numbers'
 import type { PhaseTotal } from '@/lib/formula/rules/totals'
 import type { EmulsionType } from '@/lib/formula/schema'
+import type { FigureFacts } from '@/lib/science/methods/method'
+import { FigureDetails } from '@/components/ui/figure-details'
 
 type Props = {
   phase: string
   total: PhaseTotal | undefined
   isInternal: boolean
   emulsionType: EmulsionType
+  factsOfPhase: (total: PhaseTotal) => FigureFacts
   onAdd?: () => void
 }
 
 /** The head of a phase: what it is, its share of the volume, its share by mass. */
-export function PhaseRow({ phase, total, isInternal, emulsionType, onAdd }: Props) {
+export function PhaseRow({ phase, total, isInternal, emulsionType, factsOfPhase, onAdd }: Props) {
   const inner = innerWord(emulsionType)
   const outer = emulsionType === 'water-in-silicone' ? 'silicone' : inner === 'water' ? 'oil' : 'water'
   return (
@@ -20,7 +23,13 @@ export function PhaseRow({ phase, total, isInternal, emulsionType, onAdd }: Prop
       <th scope="rowgroup" colSpan={3} className="h-9 px-2 text-left font-430">
         <b className="mr-2 font-750">{phase}</b>
         {isInternal ? `${inner}, inside` : `${outer}, outside`}
-        {total ? `: ${total.volumePercent.toFixed(1)} % of the volume` : ''}
+        {total ? (
+          <>
+            :{' '}
+            <FigureDetails figure={`${total.volumePercent.toFixed(1)} %`} facts={() => factsOfPhase(total)} />{' '}
+            of the volume
+          </>
+        ) : null}
       </th>
       <td className="px-2 text-right text-16 font-750">
         {total ? percentText(total.percentThousandths) : ''}

@@ -2,17 +2,19 @@ import { phasesOf } from '@/lib/formula/rules/arrange'
 import { moneyText, percentText } from '@/lib/formula/rules/numbers'
 import type { PhaseTotal } from '@/lib/formula/rules/totals'
 import type { EmulsionType, FormulaLine } from '@/lib/formula/schema'
+import type { FigureFacts } from '@/lib/science/methods/method'
 import { PhaseRow } from './phase-row'
 
 type Props = {
   lines: FormulaLine[]
   phases: PhaseTotal[]
   emulsionType: EmulsionType
+  factsOfPhase: (total: PhaseTotal) => FigureFacts
   foot: React.ReactNode
 }
 
 /** The lines of a locked version, or for someone who only reads. */
-export function ReadSheet({ lines, phases, emulsionType, foot }: Props) {
+export function ReadSheet({ lines, phases, emulsionType, factsOfPhase, foot }: Props) {
   return (
     <div className="overflow-x-auto" tabIndex={0} role="region" aria-label="Lines of the formula">
       <table className="w-full min-w-[560px] table-fixed border-collapse text-15">
@@ -52,6 +54,7 @@ export function ReadSheet({ lines, phases, emulsionType, foot }: Props) {
               total={phases.find((one) => one.phase === phase)}
               isInternal={lines.some((line) => line.phase === phase && line.isInternal)}
               emulsionType={emulsionType}
+              factsOfPhase={factsOfPhase}
             />
             {lines
               .filter((line) => line.phase === phase)

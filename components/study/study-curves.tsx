@@ -6,11 +6,14 @@ import { Curves } from '@/components/charts/curves'
 import { Empty } from '@/components/ui/empty'
 import { LinkButton } from '@/components/ui/link-button'
 import { fetcher } from '@/lib/http/fetcher'
+import { attributes, type AttributeKey } from '@/lib/reading/schema/attributes'
 import type { CurvesPage } from '@/lib/study/queries/curves'
 import { studyKeys } from '@/lib/study/schema'
+import { curveName } from '@/components/charts/curve-geometry'
 import { BatchTabs } from './batch-tabs'
 import { curveInputs } from './curve-inputs'
 import { PhotoStrip } from './photo-strip'
+import { SeriesDetails } from './series-details'
 import { StudyHeading, type StudyRights } from './study-heading'
 
 type Props = { code: string; rights: StudyRights; batch: string | null; station: string | null }
@@ -50,6 +53,20 @@ export function StudyCurves({ code, rights, batch, station }: Props) {
             startOn={study.startedOn}
             endWeeks={study.endWeeks}
             todayWeeks={page.todayWeeks}
+            nameAs={(input, series, name) => {
+              const attribute = attributeKeyOf(input)
+              return shown && attribute ? (
+                <SeriesDetails
+                  code={code}
+                  series={{ batchId: shown.id, studyStationId: series.id, attribute }}
+                  figure={`${input.title} at ${curveName(series)}, ${series.standing},`}
+                >
+                  {name}
+                </SeriesDetails>
+              ) : (
+                name
+              )
+            }}
             strip={
               photos.length === 0
                 ? undefined
@@ -69,6 +86,12 @@ export function StudyCurves({ code, rights, batch, station }: Props) {
       </div>
     </>
   )
+}
+
+/** A plot is titled with the label of its attribute. */
+function attributeKeyOf({ title }: CurveInput): AttributeKey | null {
+  const found = Object.values(attributes).find(({ label }) => label === title)
+  return found ? found.key : null
 }
 
 /** As high as the words and keys at its left need: title, small print, a line for each station, the table's link. */

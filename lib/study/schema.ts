@@ -81,6 +81,14 @@ export const studyFilter = z.object({
 })
 export type StudyFilter = z.output<typeof studyFilter>
 
+/** One attribute of one batch at one station. */
+export const seriesAddress = z.object({
+  batchId: z.uuid(),
+  studyStationId: z.uuid(),
+  attribute: attributeKey,
+})
+export type SeriesAddress = z.infer<typeof seriesAddress>
+
 export const studyKeys = {
   list: (filter: StudyFilter) =>
     `/api/studies?${new URLSearchParams({ is: filter.is, q: filter.q, standing: filter.standing, sort: filter.sort })}`,
@@ -88,6 +96,9 @@ export const studyKeys = {
   one: (code: string) => address(code),
   sheet: (code: string) => `${address(code)}/sheet`,
   curves: (code: string) => `${address(code)}/curves`,
+  /** What one series is computed from. */
+  series: (code: string, { batchId, studyStationId, attribute }: SeriesAddress) =>
+    `${address(code)}/series?${new URLSearchParams({ batchId, studyStationId, attribute })}`,
   readings: (code: string) => `${address(code)}/readings`,
   jars: (code: string) => `${address(code)}/jars`,
   end: (code: string) => `${address(code)}/end`,
