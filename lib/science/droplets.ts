@@ -11,7 +11,7 @@ export type Droplets = { d10: number; d32: number; d43: number; d50v: number; sp
 
 /**
  * Mean diameters of a droplet count as moment means D[p,q] (notation of ISO 9276-2), the volume median and the span
- * (d90 − d10)/d50 by volume. Quantiles are linear between the diameters, each standing at the middle of its own
+ * (d90 − d10)/d50 by volume. Quantiles are linear between the different diameters, each standing at the middle of its own
  * share of the volume; outside the first and last they are those. Micrometres.
  */
 export function droplets({ diametersUm, counts }: { diametersUm: number[]; counts?: number[] }): Droplets {
@@ -22,8 +22,10 @@ export function droplets({ diametersUm, counts }: { diametersUm: number[]; count
     assertSameLength('diametersUm', diametersUm, 'counts', counts)
     counts.forEach((count, i) => assertNotNegative(`counts[${i}]`, count))
   }
-  const classes = diametersUm
-    .map((d, i) => ({ d, n: counts?.[i] ?? 1 }))
+  const countOf = new Map<number, number>()
+  diametersUm.forEach((d, i) => countOf.set(d, (countOf.get(d) ?? 0) + (counts?.[i] ?? 1)))
+  const classes = [...countOf]
+    .map(([d, n]) => ({ d, n }))
     .filter((c) => c.n > 0)
     .sort((a, b) => a.d - b.d)
   const largest = classes[classes.length - 1]?.d
