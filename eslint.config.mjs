@@ -1,6 +1,7 @@
 import path from 'node:path'
 import nextVitals from 'eslint-config-next/core-web-vitals'
 import nextTypescript from 'eslint-config-next/typescript'
+import { formulas } from './lib/cli/lint/formulas.mjs'
 
 // The walls of the house (DEVELOPERS.md) as lint errors. Each says what to do instead; there is no list of exceptions.
 
@@ -167,9 +168,10 @@ const config = [
   ...nextVitals,
   ...nextTypescript,
   {
-    plugins: { stillstand: { rules: { boundaries } } },
+    plugins: { stillstand: { rules: { boundaries, formulas } } },
     rules: {
       'stillstand/boundaries': 'error',
+      'stillstand/formulas': 'error',
       // Queries take the actor second even where nothing depends on who asks.
       '@typescript-eslint/no-unused-vars': [
         'error',

@@ -1,4 +1,5 @@
 import { highInternalPhaseAbove } from '@/lib/science/phase-fraction'
+import { joining } from '@/lib/science/volume-share'
 
 type Props = {
   lines: { targetG: number; density: number; isInternal: boolean }[]
@@ -10,16 +11,14 @@ const high = 110
 
 /** How full the emulsion gets while the inner phase goes in evenly, and from when its drops are packed. */
 export function JoiningCurve({ lines, minutes }: Props) {
-  const volume = (isInternal: boolean) =>
+  const portions = (isInternal: boolean) =>
     lines
       .filter((line) => line.isInternal === isInternal)
-      .reduce((sum, line) => sum + line.targetG / line.density, 0)
-  const [inner, outer] = [volume(true), volume(false)]
-  if (!inner || !outer) return null
-  const at = (share: number) => (inner * share) / (inner * share + outer)
+      .map((line) => ({ mass: line.targetG, density: line.density }))
+  const curve = joining(portions(true), portions(false))
+  if (!curve) return null
+  const { fractionAt: at, packedShare } = curve
   const end = at(1)
-  // Where inner * s / (inner * s + outer) reaches the packing.
-  const packedShare = (highInternalPhaseAbove * outer) / ((1 - highInternalPhaseAbove) * inner)
   const x = (share: number) => share * wide
   const y = (fraction: number) => high - fraction * high
   const points = Array.from({ length: 41 }, (_, index) => index / 40)
@@ -38,8 +37,8 @@ export function JoiningCurve({ lines, minutes }: Props) {
         aria-label={isPacked ? `Drops are packed ${from}; ${ending}` : ending}
       >
         <path d={`M0 0V${high}H${wide}`} fill="none" stroke="var(--ink)" strokeWidth="2" />
-        <path d={`M0 ${y(0.74)}H${wide}`} stroke="var(--ink)" strokeWidth="1.5" />
-        <text x={-4} y={y(0.74) + 5} fontSize="14" textAnchor="end" fontWeight="650">
+        <path d={`M0 ${y(highInternalPhaseAbove)}H${wide}`} stroke="var(--ink)" strokeWidth="1.5" />
+        <text x={-4} y={y(highInternalPhaseAbove) + 5} fontSize="14" textAnchor="end" fontWeight="650">
           74
         </text>
         <path
@@ -50,8 +49,8 @@ export function JoiningCurve({ lines, minutes }: Props) {
         />
         {isPacked ? (
           <>
-            <path d={`M${x(packedShare)} ${y(0.74)}V${high}`} stroke="var(--ink)" />
-            <circle cx={x(packedShare)} cy={y(0.74)} r="5" fill="var(--ink)" />
+            <path d={`M${x(packedShare)} ${y(highInternalPhaseAbove)}V${high}`} stroke="var(--ink)" />
+            <circle cx={x(packedShare)} cy={y(highInternalPhaseAbove)} r="5" fill="var(--ink)" />
           </>
         ) : null}
         <text x={wide} y={high + 18} fontSize="14" textAnchor="end">

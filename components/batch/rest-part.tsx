@@ -2,6 +2,7 @@
 
 import type { BatchPage } from '@/lib/batch/queries/get-batch'
 import { gramsText } from '@/lib/batch/rules'
+import { percentOf } from '@/lib/science/percent'
 import { DecisionForm } from './decision-form'
 import { FinishForm } from './finish-form'
 import { TypeTestForm } from './type-test-form'
@@ -28,7 +29,7 @@ function Facts({ batch }: { batch: BatchPage }) {
   const weighedG = batch.weighings.reduce((sum, line) => sum + (line.actualG ?? 0), 0)
   const facts: [string, string][] = []
   if (batch.yieldG !== null) {
-    const share = weighedG ? `, ${((100 * batch.yieldG) / weighedG).toFixed(1)} % of what went in` : ''
+    const share = weighedG ? `, ${percentOf(batch.yieldG, weighedG).toFixed(1)} % of what went in` : ''
     facts.push(['Yield', `${gramsText(batch.yieldG)} g${share}`])
   }
   if (batch.fillG !== null)

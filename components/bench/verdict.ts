@@ -2,7 +2,8 @@ import type { DraftEntry, Slot } from '@/components/bench/draft'
 import type { BenchField } from '@/lib/bench/rules'
 import { ImpossibleEntry, valueOf } from '@/lib/reading/rules/value'
 import { figure } from '@/lib/report/rules'
-import { bandUse } from '@/components/marks/band-bar-shapes'
+import { bandUsed, edgeFrom } from '@/lib/science/band'
+import { percentOf } from '@/lib/science/percent'
 
 export type JarMeasures = { tareG: number | null; grossG: number | null; fillHeightMm: number | null }
 
@@ -43,7 +44,7 @@ function judged(field: BenchField, value: number): Verdict {
     const by =
       field.unit === '%' || edge === 0
         ? `${figure(field.attribute, Math.abs(value - edge))} ${field.unit === '%' ? 'points' : field.unit}`
-        : `${((Math.abs(value - edge) / Math.abs(edge)) * 100).toFixed(1)} %`
+        : `${percentOf(Math.abs(value - edge), edge).toFixed(1)} %`
     return {
       state: 'value',
       value,
@@ -53,8 +54,8 @@ function judged(field: BenchField, value: number): Verdict {
       advice: 'Measure a second jar before anyone worries.',
     }
   }
-  const used = bandUse(value, { width: 1, lower, upper, initial: field.initial })
-  const isEdge = used >= 0.8 && (lower !== null || upper !== null)
+  const used = field.initial === null ? 0 : (bandUsed({ lower, upper }, field.initial, value) ?? 0)
+  const isEdge = used >= edgeFrom && (lower !== null || upper !== null)
   return {
     state: 'value',
     value,

@@ -1,10 +1,8 @@
+import { closestPacking } from '@/lib/science/phase-fraction'
 import type { Point } from '../marks/shape'
 import { areaOf, centreOf, cutAt, grow, inradius, shrink } from './convex'
 
 export type Section = { width: number; height: number }
-
-/** Share of the volume above which equal round drops no longer fit (closest packing, π/√18). */
-export const CLOSEST_PACKING = Math.PI / Math.sqrt(18)
 
 /**
  * Drops cut through, as outlines inside the window, whose area is `phi` of the window's: a cell for
@@ -29,7 +27,7 @@ export function packDrops(phi: number, dropSize: number, section: Section, seed 
     drops(film, roundness).reduce((sum, drop) => sum + areaOf(drop), 0)
   // Round below closest packing; above it, and where round drops leave too much between, flattened.
   let roundness =
-    phi <= CLOSEST_PACKING ? 0.995 : Math.max(0.18, ((0.99 - phi) / (0.99 - CLOSEST_PACKING)) * 0.8)
+    phi <= closestPacking ? 0.995 : Math.max(0.18, ((0.99 - phi) / (0.99 - closestPacking)) * 0.8)
   while (roundness > 0.02 && area(0, roundness) < wanted) roundness *= 0.86
   let [thin, thick] = [0, dropSize]
   for (let turn = 0; turn < 26; turn += 1) {

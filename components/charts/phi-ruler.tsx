@@ -1,6 +1,6 @@
 'use client'
 
-import { CLOSEST_PACKING } from './emulsion-packing'
+import { closestPacking } from '@/lib/science/phase-fraction'
 import { useWidth } from './use-width'
 
 /**
@@ -11,7 +11,7 @@ export function PhiRuler({ phi, before }: { phi: number; before?: { phi: number;
   const [box, width] = useWidth<HTMLDivElement>(600)
   const from = Math.max(0, Math.min(60, Math.floor((Math.min(phi, before?.phi ?? 1) * 100 - 4) / 10) * 10))
   const x = (percent: number) => ((percent - from) / (100 - from)) * width
-  const closest = CLOSEST_PACKING * 100
+  const closest = closestPacking * 100
   const now = x(phi * 100)
   const labelX = Math.min(Math.max(now, 28), width - 28)
   const unit = width / (100 - from)

@@ -1,4 +1,5 @@
-import { dayAfter, dayName, rulerDates, rulerNumbers, timeLabel, unitOf, WEEKS_PER_MONTH } from './time-scale'
+import { dayAfter, dayName, rulerDates, rulerNumbers, timeLabel, unitOf } from './time-scale'
+import { weeksPerMonth } from '@/lib/science/months'
 import type { TimeScale } from './time-scale'
 
 export const RULER_HEIGHT = 66
@@ -19,7 +20,7 @@ export function TimeRuler({ scale, startOn, points, todayWeeks, width, caption }
   const unit = unitOf(scale.endWeeks)
   const shownToday =
     todayWeeks !== null && todayWeeks >= 0 && todayWeeks <= scale.endWeeks ? todayWeeks : null
-  const step = unit === 'month' ? WEEKS_PER_MONTH : 1
+  const step = unit === 'month' ? weeksPerMonth : 1
   const small = Array.from(
     { length: Math.floor(scale.endWeeks / step + 1e-6) + 1 },
     (_, index) => index * step,

@@ -1,9 +1,9 @@
+import { monthsOf } from '@/lib/science/months'
+
 /** Weeks on a study's one time ruler, and the days they fall on. No clock: days come from the start. */
 
 const DAY_MS = 86_400_000
 const MONTHS = ['Jan', 'Feb', 'Mar', 'Apr', 'May', 'Jun', 'Jul', 'Aug', 'Sep', 'Oct', 'Nov', 'Dec']
-/** Weeks in a twelfth of 365.25 days. */
-export const WEEKS_PER_MONTH = 365.25 / 12 / 7
 
 export type TimeUnit = 'week' | 'month'
 
@@ -26,7 +26,7 @@ export function unitOf(endWeeks: number): TimeUnit {
 }
 
 export function timeLabel(weeks: number, unit: TimeUnit): string {
-  return String(Math.round(unit === 'month' ? weeks / WEEKS_PER_MONTH : weeks))
+  return String(Math.round(unit === 'month' ? monthsOf(weeks) : weeks))
 }
 
 export type TimeScale = { zero: number; end: number; endWeeks: number; x: (weeks: number) => number }

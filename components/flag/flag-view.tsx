@@ -9,6 +9,7 @@ import { Heading } from '@/components/ui/heading'
 import type { FlagPage } from '@/lib/flag/queries/one'
 import { flagKeys } from '@/lib/flag/schema'
 import { fetcher } from '@/lib/http/fetcher'
+import { percentOf } from '@/lib/science/percent'
 import { dayIn, spokenDay } from '@/lib/study/rules/calendar'
 import { shownValue, shownWithUnit } from '@/lib/study/rules/words'
 import { AnswerPanel } from './answer-panel'
@@ -146,7 +147,7 @@ function trendText(flag: FlagPage): string | null {
   const perWeek =
     flag.attribute === 'ph' || !initial
       ? `${sign(slope)}${Math.abs(slope).toFixed(3)}`
-      : `${sign(slope)}${Math.abs((100 * slope) / initial).toFixed(1)} %`
+      : `${sign(slope)}${Math.abs(percentOf(slope, initial)).toFixed(1)} %`
   return `${perWeek} a week since the start${finding.slopeP > 0.05 ? ', which chance explains' : ''}.`
 }
 

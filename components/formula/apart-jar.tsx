@@ -1,5 +1,6 @@
 import { FormulaJar } from '@/components/charts/formula-jar'
 import type { Amounts } from '@/lib/formula/rules/totals'
+import { volumeShares } from '@/lib/science/volume-share'
 import type { EmulsionType } from '@/lib/formula/schema'
 import type { RowMiddles } from './use-row-middles'
 
@@ -14,13 +15,14 @@ const head = 24
 
 /** The jar if it all came apart: each line a layer of its own volume, led to its row. */
 export function ApartJar({ amounts, emulsionType, middles }: Props) {
-  const volume = amounts.reduce((sum, line) => sum + line.percentThousandths / line.density, 0)
-  if (!volume) return null
+  const shown = amounts.filter((line) => line.percentThousandths > 0 && line.density > 0)
+  if (shown.length === 0) return null
+  const shares = volumeShares(shown.map((line) => ({ mass: line.percentThousandths, density: line.density })))
   const waterInside = emulsionType !== 'oil-in-water'
-  const layers = amounts.map((line) => ({
+  const layers = shown.map((line, i) => ({
     id: line.id,
     name: line.inciName,
-    volumePercent: (100 * line.percentThousandths) / line.density / volume,
+    volumePercent: shares[i] ?? 0,
     phase: line.isInternal === waterInside ? ('water' as const) : ('oil' as const),
   }))
   const height = Math.max(320, (middles?.height ?? 560) - head)

@@ -1,3 +1,4 @@
+import { bandUsed, edgeFrom, isBeyondBand } from '@/lib/science/band'
 import { dotDash } from './jar-shapes'
 import type { Role, Shape } from './shape'
 import { stripes } from './texture'
@@ -57,7 +58,7 @@ export function bandScale({ width, lower, upper, initial, last, now }: BandBarIn
 }
 
 export function bandBarShapes(input: BandBarInput): Shape[] {
-  const { width, height = 7, lower, upper, initial, last, now, edgeFrom = 0.8 } = input
+  const { width, height = 7, lower, upper, initial, last, now } = input
   const pen = height < 10 ? DESK : benchPen(height)
   const scale = bandScale(input)
   const from = isNumber(lower) ? scale.place(lower) : 0
@@ -92,25 +93,20 @@ export function bandBarShapes(input: BandBarInput): Shape[] {
     if (isNumber(initial) && isOn(initial, scale))
       shapes.push(upright(scale.place(initial), pen.window, pen.initialReach))
   }
-  if (isNumber(last)) shapes.push(...spot(last, scale, width, pen, 'last', bandUse(last, input), edgeFrom))
-  if (isNumber(now)) shapes.push(...spot(now, scale, width, pen, 'now', bandUse(now, input), edgeFrom))
+  if (isNumber(last)) shapes.push(...spot(last, scale, width, pen, 'last', nearnessOf(last, input)))
+  if (isNumber(now)) shapes.push(...spot(now, scale, width, pen, 'now', nearnessOf(now, input)))
   return shapes
 }
 
-/** Share of the way from the initial to the nearer edge that lies in the value's direction: 1 at the edge. */
-export function bandUse(value: number, { lower, upper, initial }: BandBarInput): number {
-  if (isNumber(upper) && value > upper)
-    return Math.max(1.0001, shareUsed(value, initial ?? lower ?? 0, upper))
-  if (isNumber(lower) && value < lower)
-    return Math.max(1.0001, shareUsed(value, initial ?? upper ?? 0, lower))
-  if (!isNumber(initial)) return 0
-  const edge = value >= initial ? upper : lower
-  return isNumber(edge) ? shareUsed(value, initial, edge) : 0
+/** Whether a value is beyond the band, or so near its edge that its dot is ringed. Without an initial nothing is near. */
+function nearnessOf(value: number, input: BandBarInput): Nearness {
+  const band = { lower: input.lower ?? null, upper: input.upper ?? null }
+  if (isBeyondBand(band, value)) return 'beyond'
+  const used = isNumber(input.initial) ? bandUsed(band, input.initial, value) : null
+  return used !== null && used >= (input.edgeFrom ?? edgeFrom) ? 'near' : 'inside'
 }
 
-function shareUsed(value: number, from: number, edge: number): number {
-  return edge === from ? 0 : (value - from) / (edge - from)
-}
+type Nearness = 'inside' | 'near' | 'beyond'
 
 type Pen = {
   window: number
@@ -181,10 +177,9 @@ function spot(
   width: number,
   pen: Pen,
   when: 'last' | 'now',
-  used: number,
-  edgeFrom: number,
+  nearness: Nearness,
 ): Shape[] {
-  const isOut = used > 1
+  const isOut = nearness === 'beyond'
   const colour: Role = isOut && when === 'now' ? 'alarm' : 'ink'
   if (!isOn(value, scale)) return arrow(value > scale.max, width, pen, when, isOut ? 'alarm' : 'ink')
   const cx = scale.place(value)
@@ -199,7 +194,7 @@ function spot(
     stroke: 'paper',
     width: pen.halo,
   }
-  if (used < edgeFrom || isOut) return [solid]
+  if (nearness !== 'near') return [solid]
   return [solid, { kind: 'circle', cx, cy: 0, r: pen.ring, stroke: 'alarm', width: pen.ringLine }]
 }
 

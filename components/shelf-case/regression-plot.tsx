@@ -1,5 +1,5 @@
 import { Figure } from '@/components/marks/figure'
-import { regressionKeyShapes, regressionShapes } from '@/components/shelf-case/regression-shapes'
+import { regressionKeyShapes, regressionShapes } from '@/components/charts/regression-shapes'
 import type { Computed } from '@/lib/shelf-case/rules/build'
 import type { AttributeEvidence } from '@/lib/shelf-case/rules/content'
 import { regressionView } from '@/lib/shelf-case/rules/plot'

@@ -7,6 +7,8 @@ import { Section } from '@/components/ui/section'
 import { Select } from '@/components/ui/select'
 import type { PlannedAttribute, ProtocolPlan } from '@/lib/protocol/schema'
 import { attributeOf } from '@/lib/reading/schema/attributes'
+import { mean } from '@/lib/science/mean'
+import { viscosity } from '@/lib/science/viscosity'
 import { shownWithUnit } from '@/lib/study/rules/words'
 import { initialAttributes, typedKey, type Draft, type Offer } from './start-state'
 
@@ -120,9 +122,10 @@ function Computed({ planned, draft, texts }: { planned: PlannedAttribute; draft:
   if (!planned.viscosity || !draft.isTorque) return null
   const torques = (texts ?? []).map(readNumber).filter((value) => value !== null)
   if (torques.length === 0) return null
-  const factor = planned.viscosity.spindleConstant / planned.viscosity.rpm
-  const mean = (torques.reduce((sum, torque) => sum + torque, 0) / torques.length) * factor
-  return <p className="pb-1.5 font-600">{shownWithUnit('viscosity', mean)}</p>
+  const torquePercent = mean(torques)
+  if (torquePercent <= 0) return null
+  const { mPas } = viscosity({ torquePercent, ...planned.viscosity })
+  return <p className="pb-1.5 font-600">{shownWithUnit('viscosity', mPas)}</p>
 }
 
 /** The server names a reading by its place in what was sent. */

@@ -2,6 +2,7 @@ import { readNumber } from '@/components/ui/read-number'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
 import { jarsOfPlan } from '@/lib/protocol/rules/plan'
 import type { ProtocolRow } from '@/lib/protocol/queries'
+import { jarsFromGrams } from '@/lib/science/jar-grams'
 import type { ReleasedBatch } from '@/lib/study/queries/batches'
 import { adjustedPlan, waysToFit } from '@/lib/study/rules/plan'
 import { chosenStations } from '@/lib/study/rules/stations'
@@ -65,7 +66,7 @@ export function needsOf(offer: Offer, draft: Draft) {
         leftG,
         plan,
         ...need,
-        enoughFor: Math.floor((leftG * (1 - plan.lossPercent / 100)) / plan.fillG),
+        enoughFor: jarsFromGrams(leftG, plan.fillG, plan.lossPercent),
         options: isShortAsPlanned ? waysToFit(protocol.plan, leftG) : [],
       },
     ]

@@ -1,4 +1,5 @@
 import { grouped } from '@/lib/formula/rules/numbers'
+import { percentOf } from '@/lib/science/percent'
 import type { BatchState, TypeFound } from './schema'
 
 /** [practice] A line is taken as weighed right within half a percent of its target … */
@@ -33,7 +34,7 @@ export function weighed(targetG: number, actualG: number): Weighed {
   const off = gramsText(Math.abs(differenceG))
   return {
     differenceG,
-    differencePercent: targetG > 0 ? (100 * differenceG) / targetG : null,
+    differencePercent: targetG > 0 ? percentOf(differenceG, targetG) : null,
     isWithin,
     words: isWithin ? 'Within what is allowed' : `${off} g ${differenceG < 0 ? 'to go' : 'too much'}`,
   }

@@ -1,3 +1,4 @@
+import { percentFrom } from '@/lib/science/percent'
 import { phSlope } from '@/lib/science/ph-slope'
 import type { CalibrationCheck } from '@/lib/calibration/schema'
 
@@ -12,7 +13,7 @@ export type CalibrationResult = {
 export function judgeCalibration(check: CalibrationCheck): CalibrationResult {
   if (check.kind === 'meter') return judgeMeter(check)
   if (check.kind === 'viscometer') {
-    const differencePercent = (check.readMPas / check.fluidMPas - 1) * 100
+    const differencePercent = percentFrom(check.readMPas, check.fluidMPas)
     return judged(
       Math.abs(differencePercent) <= check.allowedPercent,
       { ...check, differencePercent },

@@ -71,6 +71,9 @@ export function bandUsed(band: Band, initial: number, value: number): number | n
   return Math.abs(value - initial) / room
 }
 
+/** Share of the band from which a reading is flagged though its standing holds. */
+export const edgeFrom = 0.8
+
 /** Distance from the initial to the nearer edge. */
 export function nearerEdge(band: Band, initial: number): number {
   return Math.min(

@@ -1,4 +1,5 @@
 import { assertComputable, assertFinite, assertNotNegative, assertPositive, ScienceError } from './guard'
+import { gramsOfJars } from './jar-grams'
 
 export type JarPlanStation = {
   name: string
@@ -54,7 +55,7 @@ export function jarPlan(input: JarPlanInput): JarPlan {
     spares += station.spares
   })
   const jars = watchJars + measuringJars + spares + input.initialJars + input.retains
-  const grams = (jars * input.fillG) / (1 - input.lossPercent / 100)
+  const grams = gramsOfJars(jars, input.fillG, input.lossPercent)
   const shortG = Math.max(0, grams - input.batchG)
   return assertComputable('stations', {
     jars,

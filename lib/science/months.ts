@@ -1,3 +1,10 @@
+const weekMs = 7 * 24 * 3600 * 1000
+
+/** Weeks from one instant to another, both as ISO 8601 texts; negative where it comes before. */
+export function weeksSince(from: string, to: string): number {
+  return (Date.parse(to) - Date.parse(from)) / weekMs
+}
+
 /** Weeks in a month of 365.25 / 12 days. */
 export const weeksPerMonth = 365.25 / 12 / 7
 

@@ -1,6 +1,7 @@
 import { z } from '@/lib/http/zod'
+import { zeroCelsius } from '@/lib/science/kelvin'
 
-const degrees = z.number().gt(-273.15, 'That is below absolute zero.').max(400).nullable()
+const degrees = z.number().gt(-zeroCelsius, 'That is below absolute zero.').max(400).nullable()
 
 /** What a manager says of a place where jars stand. */
 const stationFields = {
@@ -59,7 +60,7 @@ export const loggedTemperatures = z.object({
         measuredAt: z.iso.datetime({ offset: true }),
         temperatureC: z
           .number('Give the temperature as a number.')
-          .gt(-273.15, 'That is below absolute zero.')
+          .gt(-zeroCelsius, 'That is below absolute zero.')
           .max(400, 'That is hotter than any station.'),
         source: z.enum(['typed', 'logger']).default('typed'),
       }),

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { areaOf, centreOf, grow, inradius, shrink } from '@/components/charts/convex'
-import { CLOSEST_PACKING, packDrops } from '@/components/charts/emulsion-packing'
+import { packDrops } from '@/components/charts/emulsion-packing'
+import { closestPacking } from '@/lib/science/phase-fraction'
 import { emulsionShapes, spotFor } from '@/components/charts/emulsion-shapes'
 import { formulaJarShapes, placeLayers } from '@/components/charts/formula-jar-shapes'
 import type { Point } from '@/components/marks/shape'
@@ -69,7 +70,7 @@ describe('the cut through an emulsion', () => {
     }
     expect(roundest(0.5)).toBeGreaterThan(0.96)
     expect(roundest(0.95)).toBeLessThan(0.9)
-    expect(CLOSEST_PACKING).toBeCloseTo(0.7405, 4)
+    expect(closestPacking).toBeCloseTo(0.7405, 4)
   })
 
   it('is the same picture every time', () => {

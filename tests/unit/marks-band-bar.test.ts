@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { bandBarShapes, bandScale, bandUse } from '@/components/marks/band-bar-shapes'
+import { bandBarShapes, bandScale } from '@/components/marks/band-bar-shapes'
 import { boundsOf } from '@/components/marks/place'
 import type { Circle, Path, Shape } from '@/components/marks/shape'
 
@@ -56,11 +56,19 @@ describe('band bar', () => {
     expect(bandBarShapes({ width: 250 })).toHaveLength(1)
   })
 
-  it('counts the use of a band as 0 at the initial and 1 at the edge', () => {
-    expect(bandUse(48_200, viscosity)).toBe(0)
-    expect(bandUse(38_600, viscosity)).toBeCloseTo(1)
-    expect(bandUse(57_800, viscosity)).toBeCloseTo(1)
-    expect(bandUse(43_400, viscosity)).toBeCloseTo(0.5)
-    expect(bandUse(60_000, viscosity)).toBeGreaterThan(1)
+  it('rings a value near the edge, alarms at one beyond it, and does neither inside', () => {
+    const look = (now: number, more = {}) => {
+      const found = circles(bandBarShapes({ ...viscosity, ...more, now }))
+      return [found.length, found[0]?.fill]
+    }
+    // 9 600 from the initial to either edge: 0.5, 0.79 and 0.81 of it, the edge itself, and past it.
+    expect(look(43_400)).toEqual([1, 'ink'])
+    expect(look(48_200 - 0.79 * 9_600)).toEqual([1, 'ink'])
+    expect(look(48_200 - 0.81 * 9_600)).toEqual([2, 'ink'])
+    expect(look(57_800)).toEqual([2, 'ink'])
+    expect(look(57_801)).toEqual([1, 'alarm'])
+    // Without an initial there is no way used, but beyond is beyond.
+    expect(look(57_000, { initial: null })).toEqual([1, 'ink'])
+    expect(look(57_801, { initial: null })).toEqual([1, 'alarm'])
   })
 })

@@ -1,5 +1,6 @@
 import { sql } from 'kysely'
 import type { Db, Trx } from '@/lib/db/client'
+import { mean } from '@/lib/science/mean'
 import type { SeriesFinding, Standing } from '@/lib/science/series'
 
 export type CurrentSeries = Awaited<ReturnType<typeof listCurrentSeries>>[number]
@@ -68,10 +69,10 @@ export async function listLastReadings(
 /** Means of the initial's replicates per batch and attribute. */
 export async function listInitialMeans(db: Db | Trx, studyIds: string[]) {
   if (studyIds.length === 0) return []
-  return db
+  const rows = await db
     .selectFrom('reading as r')
     .select(['r.studyId', 'r.batchId', 'r.attribute'])
-    .select(({ fn }) => fn.avg<number>('r.value').as('value'))
+    .select(sql<number[]>`jsonb_agg(r.value order by r.replicate, r.id)`.as('values'))
     .where('r.studyId', 'in', studyIds)
     .where('r.studyStationId', 'is', null)
     .where('r.isVoid', '=', false)
@@ -83,4 +84,5 @@ export async function listInitialMeans(db: Db | Trx, studyIds: string[]) {
     )
     .groupBy(['r.studyId', 'r.batchId', 'r.attribute'])
     .execute()
+  return rows.map(({ values, ...row }) => ({ ...row, value: mean(values) }))
 }

@@ -1,9 +1,11 @@
 import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { isBeyondBand } from '@/lib/science/band'
+import { mean } from '@/lib/science/mean'
+import { weeksSince } from '@/lib/science/months'
+import { percentOf } from '@/lib/science/percent'
 import { trendAt } from '@/lib/science/trend'
 import type { Band } from '@/lib/science/series'
 import type { ReadingWithTrend } from '../queries/one'
-
-const weekMs = 604_800_000
 
 export type AgainstTrend = {
   readingIds: string[]
@@ -47,7 +49,7 @@ export function againstTrend(
     const values = group.flatMap((row) => (row.value === null ? [] : [row.value]))
     const [row] = group
     if (!row || values.length === 0) return []
-    return [compare(row, group, values.reduce((sum, value) => sum + value, 0) / values.length, flag)]
+    return [compare(row, group, mean(values), flag)]
   })
 }
 
@@ -59,13 +61,12 @@ function compare(
 ): AgainstTrend {
   const attribute = attributeOf(row.attribute as AttributeKey)
   const { finding } = row
-  const weeks = (Date.parse(row.measuredAt) - Date.parse(row.startedAt)) / weekMs
+  const weeks = weeksSince(row.startedAt, row.measuredAt)
   const before = finding?.points.findLast((point) => point.counted && point.time < weeks - 0.1)
   const expected = finding?.trend ? trendAt(finding.trend, weeks) : (before?.mean ?? null)
   const initial = finding?.initial ?? null
   const difference = expected === null ? null : value - expected
-  const percentOf = (size: number | null) =>
-    size === null || !initial ? null : (100 * size) / Math.abs(initial)
+  const inPercent = (size: number | null) => (size === null || !initial ? null : percentOf(size, initial))
   const band = finding?.band ?? null
   return {
     readingIds: group.map((one) => one.id),
@@ -75,13 +76,11 @@ function compare(
     value,
     expected,
     difference,
-    differencePercent: percentOf(difference),
-    scatterPercent: percentOf(finding?.trend?.sd ?? null),
+    differencePercent: inPercent(difference),
+    scatterPercent: inPercent(finding?.trend?.sd ?? null),
     initial,
     band,
-    isBeyond:
-      band !== null &&
-      ((band.lower !== null && value < band.lower) || (band.upper !== null && value > band.upper)),
+    isBeyond: band !== null && isBeyondBand(band, value),
     standing: row.standing,
     studyCode: row.studyCode,
     batchCode: row.batchCode,

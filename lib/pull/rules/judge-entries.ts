@@ -1,14 +1,13 @@
 import { AppError } from '@/lib/http/errors'
 import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
 import { conditionDoubts, cycleDoubts, valueDoubts, type EntryDoubt } from '@/lib/reading/rules/entry-doubts'
+import { weeksSince } from '@/lib/science/months'
 import type { Frame } from '@/lib/series/queries/frame'
 import { seriesUnits } from '@/lib/series/rules/input'
 import { sentenceContext } from '@/lib/series/rules/spoken'
 import { dayIn } from '@/lib/study/rules/calendar'
 import type { PullJar } from '../queries/pull-jar'
 import { missingAttributes, type ReadEntry } from './read-entries'
-
-const weekMs = 604_800_000
 
 /** One thing that the person is asked about before it is taken. */
 export type Question = { field: string; attribute: string; readingId: string | null; sentence: string }
@@ -38,7 +37,7 @@ export function judgeEntries(
       ? valueDoubts(
           { ...unit.input, readings: unit.input.readings.filter((reading) => reading.day !== jar.dueOn) },
           {
-            time: Math.max(0, (Date.parse(measuredAt) - Date.parse(frame.study.startedAt)) / weekMs),
+            time: Math.max(0, weeksSince(frame.study.startedAt, measuredAt)),
             values: own.map(({ read }) => read.value),
             isRepeat: jar.asks === 'repeat',
             ...weakestTorque(own),

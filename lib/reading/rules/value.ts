@@ -196,7 +196,7 @@ function slipSentence(value: number, last: number | null): string {
     : `The last was ${last}. Type it again.`
 }
 
-/** Without the noise of binary fractions: 0.9 of 60 mm is 1.5 %, not 1.4999999999999998. */
-function computed(value: number): number {
+/** What was computed from typed numbers, without the noise of binary fractions: 0.9 of 60 mm is 1.5 %, not 1.4999999999999998. */
+export function computed(value: number): number {
   return Number(value.toPrecision(12))
 }

@@ -1,7 +1,7 @@
 import { Svg, Text, View } from '@react-pdf/renderer'
 import { PdfDrawn } from '@/components/marks/pdf-drawn'
 import { moveShapes } from '@/components/marks/place'
-import { regressionKeyShapes, regressionShapes } from '@/components/shelf-case/regression-shapes'
+import { regressionKeyShapes, regressionShapes } from '@/components/charts/regression-shapes'
 import { text } from '@/lib/report/document/fonts'
 import { style } from '@/lib/report/document/page-frame'
 import type { AttributeEvidence, CaseContent } from '@/lib/shelf-case/rules/content'

@@ -1,5 +1,6 @@
 import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
 import { mean } from '@/lib/science/mean'
+import { weeksSince } from '@/lib/science/months'
 import { phaseFraction } from '@/lib/science/phase-fraction'
 import { separationDetectionLimit } from '@/lib/science/separation'
 import type { ReadingDoubt, SeriesInput, SeriesReading } from '@/lib/science/series'
@@ -25,7 +26,6 @@ export type Unit = {
   jars: JarReading[]
 }
 
-const weekMs = 604_800_000
 /** By definition nothing has happened yet at the start, whether or not somebody wrote it down. */
 const startsAtZero = new Set<AttributeKey>(['separation', 'look', 'odour', 'mass'])
 
@@ -137,7 +137,7 @@ function seriesReading(
   const shift = shifted.find((day) => isOnShiftedDay(day, first, frame.study.zone))
   return {
     id: jar.id,
-    time: Math.max(0, (Date.parse(first.measuredAt) - Date.parse(frame.study.startedAt)) / weekMs),
+    time: Math.max(0, weeksSince(frame.study.startedAt, first.measuredAt)),
     day: jar.day,
     jar: first.jarCode ?? first.jarId ?? '',
     values: jar.rows.map((row) => row.value!),

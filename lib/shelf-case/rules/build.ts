@@ -1,5 +1,5 @@
 import { extrapolationCap } from '@/lib/science/extrapolation-cap'
-import { nominalMonths } from '@/lib/science/months'
+import { nominalMonths, weeksSince } from '@/lib/science/months'
 import type { SeriesPoint } from '@/lib/science/series'
 import { protocolPlan } from '@/lib/protocol/schema'
 import type { CaseProposal } from '@/lib/shelf-case/schema'
@@ -13,8 +13,6 @@ import type { Evidence } from '@/lib/shelf-case/queries/evidence'
 export type Computed = Omit<CaseContent, 'case' | 'proposal' | 'putForward' | 'isInvented'>
 
 type Temperatures = { measuredAt: string; temperatureC: number }[]
-
-const weekMs = 7 * 24 * 3600 * 1000
 
 /** The station that a case speaks for: the warmest that decides at 15 to 30 °C, unless one is named. */
 export function caseStation(evidence: Evidence, studyStationId: string | null) {
@@ -36,8 +34,7 @@ export function computeCase(
   temperatures: Temperatures,
 ): Computed {
   const plan = protocolPlan.parse(evidence.study.plan)
-  const started = Date.parse(evidence.study.startedAt)
-  const weeksOf = (iso: string) => (Date.parse(iso) - started) / weekMs
+  const weeksOf = (iso: string) => weeksSince(evidence.study.startedAt, iso)
   const superseded = new Set(evidence.readings.flatMap((r) => (r.supersedesId ? [r.supersedesId] : [])))
   const standing = evidence.readings.filter((r) => !r.isVoid && !superseded.has(r.id))
   const atStation = evidence.series.filter((s) => s.studyStationId === station.id)

@@ -1,5 +1,6 @@
 import { sql } from 'kysely'
 import type { Db } from '@/lib/db/client'
+import { gramsOfJars } from '@/lib/science/jar-grams'
 
 /** Batches with the grams that are still free: yield less what earlier studies filled, loss included. */
 function batches(db: Db) {
@@ -10,34 +11,41 @@ function batches(db: Db) {
     .select(['batch.id', 'batch.code', 'batch.state', 'batch.yieldG', 'batch.madeAt'])
     .select(['formula.code as formulaCode', 'formula.name as formulaName', 'formula.emulsionType'])
     .select('formula.clientId')
-    .select((eb) =>
-      eb.fn
-        .coalesce(
-          eb
-            .selectFrom('jar')
-            .innerJoin('study', 'study.id', 'jar.studyId')
-            .whereRef('jar.batchId', '=', 'batch.id')
-            .select(
-              sql<number>`sum(study.fill_g / (1 - (study.plan->>'lossPercent')::numeric / 100))`.as('takenG'),
-            ),
-          sql<number>`0`,
-        )
-        .as('takenG'),
+    .select(
+      sql<Filled[]>`(
+        select coalesce(jsonb_agg(filled), '[]') from (
+          select count(*) as "jars", study.fill_g as "fillG", (study.plan->>'lossPercent')::numeric as "lossPercent"
+          from jar join study on study.id = jar.study_id where jar.batch_id = batch.id group by study.id
+        ) filled
+      )`.as('filled'),
     )
 }
 
+type Filled = { jars: number; fillG: number; lossPercent: number }
+
+function withTaken<T extends { filled: Filled[] }>(rows: T[]) {
+  return rows.map(({ filled, ...batch }) => ({
+    ...batch,
+    takenG: filled.reduce((sum, f) => sum + gramsOfJars(f.jars, f.fillG, f.lossPercent), 0),
+  }))
+}
+
 export async function listBatchesForStart(db: Db, ids: string[]) {
-  return batches(db)
-    .where('batch.id', '=', sql<string>`any(${ids}::uuid[])`)
-    .execute()
+  return withTaken(
+    await batches(db)
+      .where('batch.id', '=', sql<string>`any(${ids}::uuid[])`)
+      .execute(),
+  )
 }
 
 /** What the start of a study offers: released batches, newest first. */
 export async function listReleasedBatches(db: Db) {
-  return batches(db)
-    .where('batch.state', '=', 'released')
-    .orderBy('batch.madeAt', 'desc')
-    .limit(200)
-    .execute()
+  return withTaken(
+    await batches(db)
+      .where('batch.state', '=', 'released')
+      .orderBy('batch.madeAt', 'desc')
+      .limit(200)
+      .execute(),
+  )
 }
 export type ReleasedBatch = Awaited<ReturnType<typeof listReleasedBatches>>[number]

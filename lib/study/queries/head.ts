@@ -3,6 +3,7 @@ import type { Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
+import { phaseFraction, type PhaseLine } from '@/lib/science/phase-fraction'
 import { studiesOf } from './scope'
 
 /** A study with the day it is in the lab: what every page of it begins with. */
@@ -85,7 +86,7 @@ function heat({ kind, temperatureC }: { kind: string; temperatureC: number | nul
 
 /** The study's batches with what they are, and the share of their internal phase by mass. */
 export async function listStudyBatches(db: Db, studyId: string) {
-  return db
+  const rows = await db
     .selectFrom('studyBatch')
     .innerJoin('batch', 'batch.id', 'studyBatch.batchId')
     .innerJoin('formulaVersion', 'formulaVersion.id', 'batch.formulaVersionId')
@@ -93,19 +94,21 @@ export async function listStudyBatches(db: Db, studyId: string) {
     .select(['batch.id', 'batch.code', 'formula.code as formulaCode', 'formula.name as formulaName'])
     .select('formula.emulsionType')
     .select((eb) =>
-      eb.fn
-        .coalesce(
-          eb
-            .selectFrom('formulaLine')
-            .whereRef('formulaLine.formulaVersionId', '=', 'formulaVersion.id')
-            .where('formulaLine.isInternal', '=', true)
-            .select(sql<number>`sum(percent_thousandths) / 1000.0`.as('percent')),
-          sql<number>`0`,
+      eb
+        .selectFrom('formulaLine')
+        .whereRef('formulaLine.formulaVersionId', '=', 'formulaVersion.id')
+        .select(
+          sql<PhaseLine[]>`coalesce(jsonb_agg(jsonb_build_object('percent', percent_thousandths / 1000.0,
+            'density', density, 'internal', is_internal)), '[]')`.as('lines'),
         )
-        .as('internalPercent'),
+        .as('lines'),
     )
     .where('studyBatch.studyId', '=', studyId)
     .orderBy('studyBatch.position')
     .execute()
+  return rows.map(({ lines, ...batch }) => ({
+    ...batch,
+    internalPercent: lines?.length ? phaseFraction({ lines }).internalMassPercent : 0,
+  }))
 }
 export type StudyBatchRow = Awaited<ReturnType<typeof listStudyBatches>>[number]

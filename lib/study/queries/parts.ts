@@ -1,5 +1,7 @@
 import { sql } from 'kysely'
 import type { Db } from '@/lib/db/client'
+import { meanKineticTemperature } from '@/lib/science/mean-kinetic-temperature'
+import { hoursOfEntries } from '@/lib/science/temperature-log'
 import type { SeriesFinding, Standing } from '@/lib/science/series'
 
 // The parts that the pages of a study share; each is one statement whatever the study's size.
@@ -125,14 +127,23 @@ export type CurrentReading = Awaited<ReturnType<typeof listCurrentReadings>>[num
 
 /** Mean temperature of each of the study's stations while it has run. */
 export async function listStationMeans(db: Db, studyId: string) {
-  return db
+  const rows = await db
     .selectFrom('studyStation')
     .innerJoin('study', 'study.id', 'studyStation.studyId')
     .innerJoin('stationTemperature', 'stationTemperature.stationId', 'studyStation.stationId')
     .select('studyStation.id')
-    .select(sql<number>`avg(station_temperature.temperature_c)`.as('meanC'))
+    .select([
+      sql<number[]>`jsonb_agg(extract(epoch from station_temperature.measured_at) order by measured_at)`.as(
+        'seconds',
+      ),
+      sql<number[]>`jsonb_agg(station_temperature.temperature_c order by measured_at)`.as('temperaturesC'),
+    ])
     .where('studyStation.studyId', '=', studyId)
     .whereRef('stationTemperature.measuredAt', '>=', 'study.startedAt')
     .groupBy('studyStation.id')
     .execute()
+  return rows.map(({ id, seconds, temperaturesC }) => ({
+    id,
+    meanC: meanKineticTemperature(temperaturesC, hoursOfEntries(seconds.map((s) => s / 3600))).meanC,
+  }))
 }

@@ -1,5 +1,6 @@
 import { pullLabel } from '@/lib/protocol/rules/plan'
 import type { PlannedStation } from '@/lib/protocol/schema'
+import { weeksSince } from '@/lib/science/months'
 
 export type PlannedPull = {
   timeWeeks: number
@@ -30,9 +31,7 @@ export function addDays(day: string, days: number): string {
 }
 
 export function weeksBetween(from: string, to: string): number {
-  return (
-    (Date.parse(`${to.slice(0, 10)}T00:00:00Z`) - Date.parse(`${from.slice(0, 10)}T00:00:00Z`)) / 604_800_000
-  )
+  return weeksSince(from.slice(0, 10), to.slice(0, 10))
 }
 
 /** The day an instant falls on in the lab. */

@@ -1,4 +1,6 @@
 import { isBeyondBand } from '@/lib/science/band'
+import { mean } from '@/lib/science/mean'
+import { separation } from '@/lib/science/separation'
 import type { Band, SeriesFinding, Standing } from '@/lib/science/series'
 import { shownValue, shownWithUnit } from './words'
 
@@ -117,7 +119,7 @@ function pullCell(jars: PullJar[], own: Own, series: Series[], before: Cell): Ce
   const state = stateOf(jars, readings, own.today)
   const watched = layersOf(readings, own.fillHeightMm)
   const values = series.map(({ attribute, finding }) => {
-    const now = meanOf(readings, attribute)
+    const now = shownOf(readings, attribute)
     const last = before.values.find((value) => value.attribute === attribute)
     return {
       ...valueOf(attribute, finding, now),
@@ -162,10 +164,14 @@ function layersOf(readings: Reading[], fillHeightMm: number) {
   const layers = readings
     .filter((reading) => reading.attribute === 'separation' && reading.value !== null)
     .map(({ value, detail }) => {
-      const total = detail.totalMm ?? fillHeightMm
-      const top = ((detail.topMm ?? 0) / total) * 100
-      const bottom = detail.bottomMm === undefined ? value! - top : (detail.bottomMm / total) * 100
-      return { topPercent: top, bottomPercent: Math.max(0, bottom), separationPercent: value! }
+      const { topMm = 0, bottomMm, totalMm = fillHeightMm } = detail
+      const { topPercent, bottomPercent } = separation({ totalMm, topMm, bottomMm: bottomMm ?? 0 })
+      return {
+        topPercent,
+        // What was only typed in percent lies below, as water does in most that come apart.
+        bottomPercent: bottomMm === undefined ? Math.max(0, value! - topPercent) : bottomPercent,
+        separationPercent: value!,
+      }
     })
   return layers.toSorted((a, b) => b.separationPercent - a.separationPercent)[0] ?? null
 }
@@ -199,11 +205,11 @@ function valueOf(attribute: string, finding: SeriesFinding, now: number | null) 
   }
 }
 
-function meanOf(readings: Reading[], attribute: string): number | null {
+function shownOf(readings: Reading[], attribute: string): number | null {
   const values = readings
     .filter((reading) => reading.attribute === attribute && reading.value !== null)
     .map((reading) => reading.value!)
   if (values.length === 0) return null
   if (attribute === 'separation') return Math.max(...values)
-  return values.reduce((sum, value) => sum + value, 0) / values.length
+  return mean(values)
 }

@@ -1,8 +1,10 @@
 import { refuse } from '@/lib/http/errors'
 import type { PlannedAttribute } from '@/lib/protocol/schema'
 import { attributeOf } from '@/lib/reading/schema/attributes'
+import { computed } from '@/lib/reading/rules/value'
 import { readTyped } from '@/lib/reading/schema/typed'
 import { isBeyondBand, toleranceBand } from '@/lib/science/band'
+import { mean } from '@/lib/science/mean'
 import { viscosity, viscosityFactor } from '@/lib/science/viscosity'
 import type { Band } from '@/lib/science/series'
 import type { InitialReading } from '@/lib/study/schema'
@@ -131,8 +133,7 @@ function valueOf(planned: PlannedAttribute, reading: InitialReading, typed: numb
     })
   }
   const factor = viscosityFactor(conditions.spindleConstant, conditions.rpm)
-  // Twelve figures: a product of two typed numbers, without the binary remainder.
-  const value = Number(viscosity({ torquePercent: typed, factor }).mPas.toPrecision(12))
+  const value = computed(viscosity({ torquePercent: typed, factor }).mPas)
   return { value, detail: { ...conditions, torquePercent: typed } }
 }
 
@@ -142,11 +143,11 @@ function refuseOutside(
   rows: InitialRow[],
   index: number,
 ) {
-  const mean = rows.reduce((sum, row) => sum + row.value, 0) / rows.length
-  const band = toleranceBand(planned.tolerance, mean)
-  if (!isBeyondBand(band, mean)) return
+  const initial = mean(rows.map((row) => row.value))
+  const band = toleranceBand(planned.tolerance, initial)
+  if (!isBeyondBand(band, initial)) return
   throw refuse.invalid(
-    `The initial ${inSentence(planned.attribute)} of ${batch.code} is ${shownValue(planned.attribute, mean)}, outside its own band (${bandText(planned, band)}). Correct the reading, or the tolerance in the protocol.`,
+    `The initial ${inSentence(planned.attribute)} of ${batch.code} is ${shownValue(planned.attribute, initial)}, outside its own band (${bandText(planned, band)}). Correct the reading, or the tolerance in the protocol.`,
     { [`initialReadings.${index}.typed.0`]: 'Outside its own band.' },
   )
 }

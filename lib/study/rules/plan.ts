@@ -1,5 +1,6 @@
 import { jarsOfPlan, weeksOfPlan } from '@/lib/protocol/rules/plan'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
+import { fillFromGrams } from '@/lib/science/jar-grams'
 import type { StudyAdjustments } from '@/lib/study/schema'
 
 export type FitOption = {
@@ -44,7 +45,7 @@ type Way = Pick<FitOption, 'kind' | 'label' | 'adjustments'>
 /** Half the fill at least: below that the jar is another pack. */
 function lessFill(plan: ProtocolPlan, batchG: number): Way | null {
   const { jars } = jarsOfPlan(plan, batchG)
-  const fillG = Math.floor(((batchG * (1 - plan.lossPercent / 100)) / jars) * 10) / 10
+  const fillG = fillFromGrams(batchG, jars, plan.lossPercent)
   if (fillG < plan.fillG / 2 || fillG >= plan.fillG) return null
   const label = `Fill ${fillG.toFixed(1)} g instead of ${plan.fillG.toFixed(1)} g`
   return { kind: 'fill', label, adjustments: { fillG } }

@@ -1,6 +1,7 @@
 import { refuse } from '@/lib/http/errors'
 import { jarsAtStation, jarsOfPlan, missingInPlan, stationName } from '@/lib/protocol/rules/plan'
 import type { PlannedStation, ProtocolPlan } from '@/lib/protocol/schema'
+import { jarsFromGrams } from '@/lib/science/jar-grams'
 import { waysToFit } from './plan'
 import { freeIn, type StationOffer } from './stations'
 import { capital, counted } from './words'
@@ -26,7 +27,7 @@ export function refuseShortBatch(plan: ProtocolPlan, batch: BatchOffer): void {
   // The jar plan computes with a positive mass; an empty batch is short of everything.
   const need = jarsOfPlan(plan, Math.max(batchG, 0.001))
   if (need.fits) return
-  const enoughFor = Math.max(0, Math.floor((batchG * (1 - plan.lossPercent / 100)) / plan.fillG))
+  const enoughFor = jarsFromGrams(batchG, plan.fillG, plan.lossPercent)
   throw refuse.conflict(
     `${grams(need.shortG)} g are missing, so this study cannot start. ${capital(counted(need.jars, 'jar'))} of ${plan.fillG} g are ${grams(need.grams)} g with the loss; ${batch.code} has ${grams(batchG)} g left, enough for ${enoughFor}.`,
     {

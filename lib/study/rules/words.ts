@@ -51,8 +51,8 @@ export function shownWithUnit(attribute: string, value: number): string {
 
 function threeFigures(value: number): string {
   if (value === 0) return '0'
-  const decimals = 2 - Math.floor(Math.log10(Math.abs(value)))
-  return decimals >= 0 ? value.toFixed(decimals) : String(Number(value.toPrecision(3)))
+  const text = value.toPrecision(3)
+  return text.includes('e') ? String(Number(text)) : text
 }
 
 /** Thousands with a thin gap, from 10 000 on as in 1200 there is nothing to miscount. */

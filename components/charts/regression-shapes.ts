@@ -1,6 +1,7 @@
 import { stationMarkerShapes } from '@/components/marks/station-marker-shapes'
 import type { StationMarker } from '@/components/marks/heat'
 import type { Shape, Step } from '@/components/marks/shape'
+import { niceTicks } from './curve-geometry'
 import { stripes } from '@/components/marks/texture'
 
 export type RegressionBatch = {
@@ -70,7 +71,7 @@ export function regressionShapes(input: RegressionPlotInput): Shape[] {
   }
   if (input.upper !== null) beyond(frame.top, y(input.upper))
   if (input.lower !== null) beyond(y(input.lower), input.height - frame.bottom)
-  for (const v of ticks(low, high)) {
+  for (const v of niceTicks(low, high, 5)) {
     shapes.push({ kind: 'line', x1: x0, x2: x1, y1: y(v), y2: y(v), stroke: 'hair', width: 1 })
     shapes.push(word(x0 - 7, y(v) + 4.5, input.format(v), 'end', 13))
   }
@@ -188,14 +189,4 @@ function lineAt(line: { t: number; y: number }[], t: number): { t: number; y: nu
 
 function clamp(v: number, min: number, max: number): number {
   return Math.min(max, Math.max(min, v))
-}
-
-/** About five round values between two limits. */
-function ticks(low: number, high: number): number[] {
-  const rough = (high - low) / 5
-  const power = 10 ** Math.floor(Math.log10(rough))
-  const step = [1, 2, 2.5, 5, 10].map((m) => m * power).find((s) => s >= rough) ?? rough
-  const found: number[] = []
-  for (let v = Math.ceil(low / step) * step; v <= high; v += step) found.push(Math.round(v / step) * step)
-  return found
 }
