@@ -25,6 +25,7 @@ export function insideFacts(lines: Lines, totals: FormulaTotals, by: 'volume' | 
   return factsOf(phaseFractionMethod, {
     name: `Internal phase by ${by}`,
     result: exactly((by === 'volume' ? volume : mass) ?? 0, '%'),
+    lines: by === 'volume' ? [0, 1, 3] : [2],
     values: {
       total: totals.totalThousandths / 1000,
       [by === 'volume' ? 'mass' : 'volume']: by === 'volume' ? mass : volume,
@@ -38,6 +39,7 @@ export function highInternalFacts(lines: Lines, totals: FormulaTotals): FigureFa
   return factsOf(phaseFractionMethod, {
     name: 'High internal phase',
     result: totals.isHighInternalPhase ? 'Yes' : 'No',
+    lines: [0, 1, 3],
     values: { volume: totals.internalVolumePercent, limit: 100 * highInternalPhaseAbove },
     input: fractionInput(lines, (line) => line.isInternal),
   })
@@ -48,6 +50,7 @@ export function phaseFacts(lines: readonly (Amounts & { phase: string })[], tota
   return factsOf(phaseFractionMethod, {
     name: `Phase ${total.phase} by volume`,
     result: exactly(total.volumePercent, '%'),
+    lines: [0],
     values: {},
     more: [
       { says: `phase ${total.phase} by mass`, value: exactly(total.percentThousandths / 1000, '% w/w') },

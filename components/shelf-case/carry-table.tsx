@@ -1,10 +1,12 @@
+import { FigureDetails } from '@/components/ui/figure-details'
 import { Ledger } from '@/components/ui/ledger'
 import type { AttributeEvidence } from '@/lib/shelf-case/rules/content'
 import type { Computed } from '@/lib/shelf-case/rules/build'
+import { attributeFacts } from './case-facts'
 import { crossingText, decidingFit, slopeText, testText } from '@/lib/shelf-case/rules/scale'
 
 /** The statistics of each attribute in figures; each row names the topic of `calc` that makes it again. */
-export function CarryTable({ content }: { content: Computed }) {
+export function CarryTable({ content, when }: { content: Computed; when: string }) {
   return (
     <Ledger
       caption={`What each attribute supports at ${content.station.name}`}
@@ -55,7 +57,13 @@ export function CarryTable({ content }: { content: Computed }) {
           title: 'months',
           align: 'right',
           cell: (a) => (
-            <b className={a.attribute === content.limitingAttribute ? 'text-alarm' : ''}>{monthsText(a)}</b>
+            <FigureDetails
+              figure={`${a.label}, ${monthsText(a)} months,`}
+              facts={() => attributeFacts(a, content, when)}
+              className={a.attribute === content.limitingAttribute ? 'font-700 text-alarm' : 'font-700'}
+            >
+              {monthsText(a)}
+            </FigureDetails>
           ),
         },
         { key: 'by', title: 'decided by', from: 'tablet', cell: (a) => a.decidedBy ?? 'none' },

@@ -3,6 +3,7 @@
 import useSWR from 'swr'
 import { CarryTable } from '@/components/shelf-case/carry-table'
 import { CaseActs } from '@/components/shelf-case/case-acts'
+import { frozenText } from '@/components/shelf-case/case-facts'
 import { HowFar } from '@/components/shelf-case/how-far'
 import { RegressionPlot } from '@/components/shelf-case/regression-plot'
 import { RestsOn } from '@/components/shelf-case/rests-on'
@@ -70,7 +71,7 @@ export function CaseView({ code, draft, mayPutForward, maySign, whyNotSign, demo
       <div className="mt-6 grid grid-cols-1 gap-x-14 gap-y-8 lg:grid-cols-[minmax(0,1fr)_332px]">
         <div className="flex min-w-0 flex-col gap-8">
           <HowFar content={content} months={months} />
-          <CarryTable content={content} />
+          <CarryTable content={content} when={frozenText(data)} />
           <div className="grid gap-8 xl:grid-cols-2">
             {plotted ? <RegressionPlot evidence={plotted} content={content} months={months} /> : null}
             <RestsOn

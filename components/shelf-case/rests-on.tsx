@@ -1,13 +1,17 @@
 import type { ReactNode } from 'react'
+import { FigureDetails } from '@/components/ui/figure-details'
 import { Section } from '@/components/ui/section'
 import { dayText } from '@/lib/report/rules'
 import type { CaseDetail } from '@/lib/shelf-case/queries/read'
 import type { Computed } from '@/lib/shelf-case/rules/build'
+import { capFacts, frozenText, hashFacts, monthsFacts, recordFacts } from './case-facts'
 
 type Props = { content: Computed; whyFewer: string; months: number; kind: string; detail: CaseDetail }
 
 /** The evidence behind the months, one line each. */
 export function RestsOn({ content, whyFewer, months, kind, detail }: Props) {
+  const { cap } = content
+  const when = frozenText(detail)
   const counted = content.readings.filter((r) => r.state === 'counts').length
   const record = content.temperatureRecord
   const accelerated = content.shelves.filter((s) => !s.isFreezeThaw && (s.temperatureC ?? 0) >= 38)
@@ -38,21 +42,58 @@ export function RestsOn({ content, whyFewer, months, kind, detail }: Props) {
       : []),
     [
       content.station.name,
-      record
-        ? `mean kinetic ${record.calc.output.mktC.toFixed(1)} °C, ${
-            record.excursions.length === 0
-              ? 'never outside its limits'
-              : record.excursions.length === 1
-                ? 'one excursion'
-                : `${record.excursions.length} excursions`
-          }`
-        : 'no temperatures on record',
+      record ? (
+        <>
+          mean kinetic{' '}
+          <FigureDetails
+            figure={`${record.calc.output.mktC.toFixed(1)} °C`}
+            facts={() => recordFacts(record, when)}
+          />
+          ,{' '}
+          {record.excursions.length === 0
+            ? 'never outside its limits'
+            : record.excursions.length === 1
+              ? 'one excursion'
+              : `${record.excursions.length} excursions`}
+        </>
+      ) : (
+        'no temperatures on record'
+      ),
     ],
-    ...(content.cap
+    ...(cap
       ? ([
           [
             'Cap',
-            `${content.cap.output.rule}: ${Math.floor(content.cap.output.capMonths)} months. ${content.cap.why}`,
+            <>
+              {cap.output.rule}:{' '}
+              <FigureDetails
+                figure={`${Math.floor(cap.output.capMonths)} months`}
+                facts={() => capFacts(cap, when)}
+              />
+              . {cap.why}
+            </>,
+          ],
+        ] as [string, ReactNode][])
+      : []),
+    [
+      'Supported',
+      <FigureDetails
+        key="supported"
+        figure={`${content.supportedMonths} months`}
+        facts={() => monthsFacts(content, months, when)}
+      />,
+    ],
+    ...(detail.contentSha256
+      ? ([
+          [
+            'Frozen as',
+            <FigureDetails
+              key="hash"
+              figure={`hash ${detail.contentSha256.slice(0, 8)}`}
+              facts={() => hashFacts(detail)}
+            >
+              <code className="font-mono text-14">{detail.contentSha256.slice(0, 8)}</code>
+            </FigureDetails>,
           ],
         ] as [string, ReactNode][])
       : []),

@@ -43,6 +43,8 @@ export type Values = Record<string, number | string | null | undefined>
 type Own = {
   name?: string
   result: string
+  /** Lines of the method's formula that say this figure; all of them if left out. */
+  lines?: readonly number[]
   /** By the method's keys; what is left out or null is not shown. */
   values: Values
   /** Further rows of this figure alone. */
@@ -54,12 +56,12 @@ type Own = {
 
 export function factsOf(
   method: Method,
-  { name, result, values, more = [], when = '', input }: Own,
+  { name, result, lines, values, more = [], when = '', input }: Own,
 ): FigureFacts {
   return {
     name: name ?? method.name,
     result,
-    formula: method.formula,
+    formula: lines ? method.formula.filter((_, index) => lines.includes(index)) : method.formula,
     inputs: [
       ...method.inputs.flatMap(({ key, says, unit }) => {
         const value = values[key]
