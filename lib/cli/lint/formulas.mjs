@@ -8,8 +8,9 @@ const isIn = (file, ...folders) => folders.some((folder) => file.startsWith(`${f
 const draws = (file) => isIn(file, 'components/marks', 'components/charts')
 /** Rooms whose scripts invent what a demo's or a simulated laboratory finds; nothing of it is shown as computed. */
 const invents = (file) => isIn(file, 'lib/cli/seed', 'lib/cli/simulate')
-const isOneFormula = (file) =>
-  isIn(file, 'lib/science', 'tests', 'migrations') || !isIn(file, 'app', 'components', 'lib')
+/** What the product is written in, lib/science aside; tools in plain modules compute nothing that is shown. */
+const computesElsewhere = (file) =>
+  /\.tsx?$/.test(file) && isIn(file, 'app', 'components', 'lib') && !isIn(file, 'lib/science')
 
 const curved = ['exp', 'expm1', 'log', 'log1p', 'log2', 'pow', 'cbrt']
 const measured = ['log10', 'sqrt', 'hypot']
@@ -124,7 +125,7 @@ export const formulas = {
   meta: { type: 'problem', schema: [] },
   create(context) {
     const file = path.relative(context.cwd, context.filename).split(path.sep).join('/')
-    if (isOneFormula(file)) return {}
+    if (!computesElsewhere(file)) return {}
     const visitors = {}
     for (const { finds, instead } of tells)
       for (const [type, isFound] of Object.entries(finds)) {

@@ -109,7 +109,15 @@ export function computeCase(
     attributes,
     shelves: shelvesOf(evidence),
     temperatureRecord: record,
-    weakens: weaknesses({ evidence, station, attributes, record, missing, dataMonths }),
+    weakens: weaknesses({
+      batches: evidence.batches,
+      flags: evidence.flags,
+      station,
+      attributes,
+      record,
+      missing,
+      dataMonths,
+    }),
     missing,
     readings: readingTable(evidence, superseded, weeksOf),
   }

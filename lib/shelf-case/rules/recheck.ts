@@ -15,6 +15,7 @@ import { canonicalJson } from '@/lib/shelf-case/rules/canonical'
 import type { AttributeEvidence, CaseContent, DriftCalculation } from '@/lib/shelf-case/rules/content'
 import { findingOf } from '@/lib/shelf-case/rules/drift-calculation'
 import { excursionsOf } from '@/lib/shelf-case/rules/temperature'
+import { weaknesses } from '@/lib/shelf-case/rules/weakness'
 import type { AttributeKey } from '@/lib/reading/schema/attributes'
 
 /** A figure as the case states it, and as it comes out again. */
@@ -80,6 +81,7 @@ export function figuresOf(content: CaseContent): Rechecked[] {
       ),
     ),
     ...shelfFigures(content),
+    ...weaknessFigures(content),
     ...temperatureFigures(content),
   ]
 }
@@ -188,6 +190,14 @@ function shelfFigures(content: CaseContent): Rechecked[] {
       .map(({ months, percent, standing }) => ({ months, percent, standing }))
     return [figure(`${at}: percent and standing of each jar`, stated, again), ...layers]
   })
+}
+
+/** Doubts that the figures themselves raise; those of flags are quoted from the record. */
+function weaknessFigures(content: CaseContent): Rechecked[] {
+  if (content.format === 'stillstand-case-1') return []
+  const computed = weaknesses({ ...content, flags: [], record: content.temperatureRecord, missing: [] })
+  const stated = content.weakens.filter((w) => w.state === 'stands' && !/^Flag \d+ is open$/.test(w.title))
+  return [figure('doubts that the figures raise', stated, computed)]
 }
 
 function temperatureFigures({ temperatureRecord: record }: CaseContent): Rechecked[] {

@@ -9,8 +9,9 @@ import type { Evidence } from '@/lib/shelf-case/queries/evidence'
 
 /** What a reviewer has to weigh, worst first: doubts that stand, then those answered, then what is missing. */
 export function weaknesses(from: {
-  evidence: Evidence
-  station: Evidence['stations'][number]
+  batches: unknown[]
+  flags: Evidence['flags']
+  station: { name: string }
   attributes: AttributeEvidence[]
   record: TemperatureRecord | null
   missing: CaseContent['missing']
@@ -36,10 +37,10 @@ export function weaknesses(from: {
       text: `The data end at month ${Math.floor(from.dataMonths)}; ${beyond.map((a) => a.label).join(', ')} ${beyond.length === 1 ? 'is' : 'are'} carried on by a line.`,
       by: null,
     })
-  if (from.evidence.batches.length < 3)
+  if (from.batches.length < 3)
     stands.push({
       state: 'stands',
-      title: from.evidence.batches.length === 1 ? 'One batch only' : 'Two batches only',
+      title: from.batches.length === 1 ? 'One batch only' : 'Two batches only',
       text: 'Batches may differ more than this study can show. Three are usual for a date [practice].',
       by: null,
     })
@@ -57,9 +58,9 @@ export function weaknesses(from: {
       text: `${Math.round(x.hours)} h from ${dayText(x.from)}, ${x.worstC.toFixed(1)} °C at the worst. Mean kinetic temperature does not excuse it.`,
       by: null,
     })
-  for (const f of from.evidence.flags.filter((f) => f.state === 'open'))
+  for (const f of from.flags.filter((f) => f.state === 'open'))
     stands.push({ state: 'stands', title: `Flag ${f.number} is open`, text: f.sentence, by: null })
-  const answered = from.evidence.flags
+  const answered = from.flags
     .filter((f) => f.state !== 'open')
     .map((f): Weakness => ({
       state: 'answered',
