@@ -1,8 +1,11 @@
 'use client'
 
+import type { ReactNode } from 'react'
+import { FigureDetails } from '@/components/ui/figure-details'
 import type { BatchPage } from '@/lib/batch/queries/get-batch'
 import { gramsText } from '@/lib/batch/rules'
 import { percentOf } from '@/lib/science/percent'
+import { yieldFacts } from './batch-facts'
 import { DecisionForm } from './decision-form'
 import { FinishForm } from './finish-form'
 import { TypeTestForm } from './type-test-form'
@@ -27,10 +30,24 @@ export function RestPart({ batch, mayWrite, onSaved }: Props) {
 
 function Facts({ batch }: { batch: BatchPage }) {
   const weighedG = batch.weighings.reduce((sum, line) => sum + (line.actualG ?? 0), 0)
-  const facts: [string, string][] = []
+  const facts: [string, ReactNode][] = []
   if (batch.yieldG !== null) {
-    const share = weighedG ? `, ${percentOf(batch.yieldG, weighedG).toFixed(1)} % of what went in` : ''
-    facts.push(['Yield', `${gramsText(batch.yieldG)} g${share}`])
+    const { yieldG } = batch
+    facts.push([
+      'Yield',
+      weighedG ? (
+        <>
+          {gramsText(yieldG)} g,{' '}
+          <FigureDetails
+            figure={`${percentOf(yieldG, weighedG).toFixed(1)} %`}
+            facts={() => yieldFacts(yieldG, weighedG)}
+          />{' '}
+          of what went in
+        </>
+      ) : (
+        `${gramsText(yieldG)} g`
+      ),
+    ])
   }
   if (batch.fillG !== null)
     facts.push(['Fill of a jar', `${gramsText(batch.fillG)} g${batch.closure ? `, ${batch.closure}` : ''}`])

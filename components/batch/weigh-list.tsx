@@ -1,8 +1,10 @@
 'use client'
 
 import { useState } from 'react'
+import { FigureDetails } from '@/components/ui/figure-details'
 import { gramsText, percentOffText, weighed } from '@/lib/batch/rules'
 import type { BatchPage } from '@/lib/batch/queries/get-batch'
+import { weighingFacts } from './batch-facts'
 
 type Line = BatchPage['weighings'][number]
 type Props = {
@@ -45,6 +47,7 @@ export function WeighList({ lines, current, isOpen, isBench, onPick }: Props) {
               line={line}
               isCurrent={line.id === current}
               isOpen={isOpen && !isWindow}
+              isBench={isBench}
               onPick={onPick}
             />
           ))}
@@ -68,8 +71,9 @@ function WeighRow({
   line,
   isCurrent,
   isOpen,
+  isBench,
   onPick,
-}: { line: Line; isCurrent: boolean } & Omit<Props, 'lines' | 'current' | 'isBench'>) {
+}: { line: Line; isCurrent: boolean } & Omit<Props, 'lines' | 'current'>) {
   const verdict = line.actualG === null ? null : weighed(line.targetG, line.actualG)
   return (
     <tr
@@ -101,7 +105,16 @@ function WeighRow({
       <td
         className={`whitespace-nowrap pr-2 text-right ${verdict && !verdict.isWithin ? 'font-650 text-alarm' : ''}`}
       >
-        {verdict ? percentOffText(verdict.differencePercent) : ''}
+        {verdict && line.actualG !== null && !isBench ? (
+          <FigureDetails
+            figure={percentOffText(verdict.differencePercent)}
+            facts={() => weighingFacts(line, line.actualG ?? 0)}
+          />
+        ) : verdict ? (
+          percentOffText(verdict.differencePercent)
+        ) : (
+          ''
+        )}
       </td>
     </tr>
   )

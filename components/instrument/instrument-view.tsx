@@ -5,14 +5,20 @@ import { useRouter } from 'next/navigation'
 import { useState } from 'react'
 import { Button } from '@/components/ui/button'
 import { Empty } from '@/components/ui/empty'
+import { FigureDetails } from '@/components/ui/figure-details'
 import { Heading } from '@/components/ui/heading'
 import { Ledger } from '@/components/ui/ledger'
 import { Section } from '@/components/ui/section'
 import { isOverdue } from '@/lib/calibration/rules'
 import type { InstrumentPage } from '@/lib/instrument/queries'
 import { dayIn, spokenDay } from '@/lib/study/rules/calendar'
+import { viscosityFactor } from '@/lib/science/viscosity'
+import { calibrationFacts, factorFacts } from './calibration-facts'
 import { CalibrationDialog } from './calibration-dialog'
 import { InstrumentDialog } from './instrument-dialog'
+
+/** Factors are listed at one speed, so that spindles compare. */
+const shownRpm = 10
 
 type Props = {
   instrument: InstrumentPage
@@ -61,9 +67,19 @@ export function InstrumentView({ instrument, today, timeZone, mayWrite, mayCalib
                 { key: 'constant', title: 'constant', align: 'right', cell: (row) => row.constant },
                 {
                   key: 'factor',
-                  title: 'mPa·s a % at 10 rpm',
+                  title: `mPa·s a % at ${shownRpm} rpm`,
                   align: 'right',
-                  cell: (row) => row.constant / 10,
+                  cell: (row) => {
+                    const factor = viscosityFactor(row.constant, shownRpm)
+                    return (
+                      <FigureDetails
+                        figure={`${row.name}, ${factor} mPa·s a %,`}
+                        facts={() => factorFacts(row.constant, shownRpm, factor)}
+                      >
+                        {factor}
+                      </FigureDetails>
+                    )
+                  },
                 },
               ]}
             />
@@ -89,7 +105,11 @@ export function InstrumentView({ instrument, today, timeZone, mayWrite, mayCalib
                   <span className={row.result === 'doubtful' ? 'font-650 text-alarm' : ''}>{row.result}</span>
                 ),
               },
-              { key: 'sentence', title: 'what it showed', cell: (row) => row.detail.sentence ?? '' },
+              {
+                key: 'sentence',
+                title: 'what it showed',
+                cell: (row) => <Showed row={row} timeZone={timeZone} />,
+              },
               { key: 'due', title: 'held until', from: 'tablet', cell: (row) => spokenDay(row.dueOn) },
               { key: 'by', title: 'by', cell: (row) => row.initials },
               { key: 'note', title: 'note', from: 'desk', cell: (row) => row.note },
@@ -109,6 +129,20 @@ export function InstrumentView({ instrument, today, timeZone, mayWrite, mayCalib
         />
       ) : null}
     </>
+  )
+}
+
+/** What a calibration showed; pressed, it says from which numbers. */
+function Showed({ row, timeZone }: { row: InstrumentPage['calibrations'][number]; timeZone: string }) {
+  const sentence = row.detail.sentence ?? ''
+  const day = spokenDay(dayIn(timeZone, row.calibratedAt))
+  const facts = calibrationFacts(row.detail, `Computed when it was logged, of ${day}.`)
+  return facts ? (
+    <FigureDetails figure={`“${sentence}” of ${day}`} facts={() => facts}>
+      {sentence}
+    </FigureDetails>
+  ) : (
+    sentence
   )
 }
 

@@ -5,6 +5,7 @@ import { useRouter } from 'next/navigation'
 import { useState } from 'react'
 import { Button } from '@/components/ui/button'
 import { Empty } from '@/components/ui/empty'
+import { FigureDetails } from '@/components/ui/figure-details'
 import { Heading } from '@/components/ui/heading'
 import { Ledger } from '@/components/ui/ledger'
 import { Section } from '@/components/ui/section'
@@ -12,6 +13,7 @@ import type { StationPage, stationRecord } from '@/lib/station/queries'
 import { dayIn, spokenDay } from '@/lib/study/rules/calendar'
 import { capital, counted } from '@/lib/study/rules/words'
 import { StationDialog } from './station-dialog'
+import { excursionFacts, recordFacts } from './station-facts'
 import { limitsText } from './station-list'
 import { TemperatureDialog } from './temperature-dialog'
 import { TemperaturePlot } from './temperature-plot'
@@ -36,7 +38,7 @@ export function StationView({ station, record, timeZone, mayWrite, mayLog }: Pro
           </>
         }
         headline={<Headline record={record} name={capital(station.name)} />}
-        sentence={recordSentence(record)}
+        sentence={<RecordSentence record={record} />}
         acts={
           <>
             {mayLog ? (
@@ -65,7 +67,19 @@ export function StationView({ station, record, timeZone, mayWrite, mayLog }: Pro
               columns={[
                 { key: 'from', title: 'from', cell: (row) => moment(row.from) },
                 { key: 'to', title: 'to', cell: (row) => moment(row.to) },
-                { key: 'hours', title: 'hours', align: 'right', cell: (row) => row.hours.toFixed(1) },
+                {
+                  key: 'hours',
+                  title: 'hours',
+                  align: 'right',
+                  cell: (row) => (
+                    <FigureDetails
+                      figure={`${row.hours.toFixed(1)} h`}
+                      facts={() => excursionFacts(row, station)}
+                    >
+                      {row.hours.toFixed(1)}
+                    </FigureDetails>
+                  ),
+                },
                 {
                   key: 'extreme',
                   title: 'went to',
@@ -138,10 +152,18 @@ function Headline({ record, name }: { record: Record; name: string }) {
   )
 }
 
-function recordSentence({ mktC, meanC, minC, maxC, readings }: Record): string | undefined {
-  if (mktC === null || meanC === null || minC === null || maxC === null) return undefined
+function RecordSentence({ record }: { record: Record }) {
+  const { mktC, meanC, minC, maxC, readings } = record
+  if (mktC === null || meanC === null || minC === null || maxC === null) return null
   const shown = (value: number) => value.toFixed(1).replace('-', '−')
-  return `Mean kinetic temperature ${shown(mktC)} °C, mean ${shown(meanC)} °C, from ${shown(minC)} to ${shown(maxC)} °C. ${capital(counted(readings, 'reading'))} in 180 days. The mean kinetic temperature never excuses an excursion.`
+  return (
+    <>
+      Mean kinetic temperature{' '}
+      <FigureDetails figure={`${shown(mktC)} °C`} facts={() => recordFacts(record)} />, mean {shown(meanC)}{' '}
+      °C, from {shown(minC)} to {shown(maxC)} °C. {capital(counted(readings, 'reading'))} in 180 days. The
+      mean kinetic temperature never excuses an excursion.
+    </>
+  )
 }
 
 function momentIn(timeZone: string, instant: string): string {

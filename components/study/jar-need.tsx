@@ -1,7 +1,9 @@
 import { Drawn } from '@/components/marks/drawn'
 import { jarShapes } from '@/components/marks/jar-shapes'
 import { moveShapes } from '@/components/marks/place'
+import { FigureDetails } from '@/components/ui/figure-details'
 import { grouped } from '@/lib/study/rules/words'
+import { needFacts } from './need-facts'
 import type { Need } from './start-state'
 
 const width = 696
@@ -84,9 +86,21 @@ export function JarNeed({ need }: { need: Need }) {
         <path d={`M0 43H${width}`} stroke="var(--ink)" strokeWidth="2" />
       </svg>
       <figcaption className="mt-1 text-15">
-        {need.jars} jars of {plan.fillG.toFixed(1)} g are {grouped(String(Math.ceil(need.grams)))} g with{' '}
-        {plan.lossPercent} % loss. {need.batch.code} has {grouped(String(Math.floor(need.leftG)))} g left,
-        enough for {need.enoughFor}.
+        <FigureDetails figure={`${need.jars} jars`} facts={() => needFacts(need, 'jars')} /> of{' '}
+        {plan.fillG.toFixed(1)} g are{' '}
+        <FigureDetails
+          figure={`${grouped(String(Math.ceil(need.grams)))} g`}
+          facts={() => needFacts(need, 'grams')}
+        />{' '}
+        with {plan.lossPercent} % loss. {need.batch.code} has {grouped(String(Math.floor(need.leftG)))} g
+        left, enough for {need.enoughFor}.{' '}
+        {need.fits ? null : (
+          <FigureDetails
+            figure={`${grouped(String(Math.ceil(need.shortG)))} g short`}
+            facts={() => needFacts(need, 'short')}
+            className="font-650 text-alarm"
+          />
+        )}
       </figcaption>
     </figure>
   )

@@ -1,9 +1,14 @@
-import { jarPlan } from '@/lib/science/jar-plan'
+import { jarPlan, type JarPlanInput } from '@/lib/science/jar-plan'
 import type { PlannedStation, ProtocolPlan } from '@/lib/protocol/schema'
 
 /** What one batch must give: jars of each kind and grams, from a plan. */
 export function jarsOfPlan(plan: ProtocolPlan, batchG: number) {
-  return jarPlan({
+  return jarPlan(jarPlanInput(plan, batchG))
+}
+
+/** The plan as topic `jar-plan` takes it. */
+export function jarPlanInput(plan: ProtocolPlan, batchG: number): JarPlanInput {
+  return {
     stations: plan.stations.map((station, index) => ({
       name: stationName(station, index),
       timePoints: station.timePoints,
@@ -16,7 +21,7 @@ export function jarsOfPlan(plan: ProtocolPlan, batchG: number) {
     fillG: plan.fillG,
     batchG,
     lossPercent: plan.lossPercent,
-  })
+  }
 }
 
 export function jarsAtStation(station: PlannedStation): number {
