@@ -3,12 +3,14 @@ import { createHash } from 'node:crypto'
 import { mkdtempSync, writeFileSync } from 'node:fs'
 import { tmpdir } from 'node:os'
 import path from 'node:path'
-import { createElement } from 'react'
+import { createElement, type ReactElement } from 'react'
 import { renderToStaticMarkup } from 'react-dom/server'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { GET as frozenContent } from '@/app/api/cases/[code]/content/route'
+import { GET as oneCase } from '@/app/api/cases/[code]/route'
 import { GET as report } from '@/app/api/cases/[code]/report/route'
 import { CarryTable } from '@/components/shelf-case/carry-table'
+import { RestsOn } from '@/components/shelf-case/rests-on'
 import { signFinished } from '@/lib/cli/seed/cases'
 import { openFilling } from '@/lib/cli/seed/context'
 import { layGround, tellFinished } from '@/lib/cli/seed/finished'
@@ -239,11 +241,16 @@ describe('what is printed', () => {
     }
   }, 60_000)
 
-  it('on the page is the same', () => {
-    const { fits } = answers()
-    const table = renderToStaticMarkup(createElement(CarryTable, { content }))
-      .replace(/<[^>]+>/g, ' ')
-      .replace(/\s+/g, ' ')
+  it('on the page is the same', async () => {
+    const { body: detail } = await call(oneCase, { cookie: qa.cookie, params: { code: 'C-001' } })
+    expect(digits(detail.content)).toBe(digits(content))
+    const { cap, mkt, fits } = answers()
+    const text = (page: ReactElement) =>
+      renderToStaticMarkup(page)
+        .replace(/<[^>]+>/g, ' ')
+        .replace(/\s+/g, ' ')
+    const when = content.putForward.at
+    const table = text(createElement(CarryTable, { content, when }))
     for (const { a, fit } of fits) {
       const deciding =
         fit['batches'].find((b: { name: string }) => b.name === fit['limitingBatch']) ?? fit['batches'][0]
@@ -251,10 +258,26 @@ describe('what is printed', () => {
         p(fit['tests'].find((x: { name: string }) => x.name === name)),
       )
       const meets = fit['crossing'] === null ? 'past 60' : fit['crossing'].toFixed(1)
-      expect(table).toContain(
-        `${deciding.residualSd.toPrecision(2)} ${tests.filter(Boolean).join(' ')} ${meets}`,
-      )
+      const row = [deciding.residualSd.toPrecision(2), ...tests.filter(Boolean), meets]
+      expect(table).toContain(row.join(' '))
       expect(table).toContain(a.label)
     }
+    const rests = text(
+      createElement(RestsOn, {
+        content,
+        detail,
+        whyFewer: '',
+        months: content.proposal.months,
+        kind: detail.kind,
+      }),
+    )
+    expect(rests).toMatch(new RegExp(`mean kinetic ${mkt['mktC'].toFixed(1)} °C ?, one excursion`))
+    expect(rests).toContain(`${cap['rule']}: ${Math.floor(cap['capMonths'])} months`)
+    const worst = Math.max(
+      ...content.shelves
+        .filter((s) => s.temperatureC === 40)
+        .flatMap((s) => s.jars.map((jar) => jar.calc?.output.percent ?? 0)),
+    )
+    expect(rests).toContain(`at most ${worst.toFixed(1)} % came apart in 6 months`)
   }, 60_000)
 })
