@@ -41,9 +41,10 @@ export type Regression = Pick<
 export function regression({ x, y, confidence = 0.95, at = [] }: RegressionInput): Regression {
   assertConfidence(confidence)
   at.forEach((value, i) => assertFinite(`at[${i}]`, value))
-  const { n, slope, intercept, slopeSe, interceptSe, residualSd, r2, df, slopeP, ...fit } = fitLine(x, y)
-  const own = { n, slope, intercept, slopeSe, interceptSe, residualSd, r2, df, slopeP }
-  return { ...own, predictions: at.map((value) => predictLine({ ...own, ...fit }, value, confidence)) }
+  const fit = fitLine(x, y)
+  const { n, slope, intercept, slopeSe, interceptSe, residualSd, r2, df, slopeP } = fit
+  const predictions = at.map((value) => predictLine(fit, value, confidence))
+  return { n, slope, intercept, slopeSe, interceptSe, residualSd, r2, df, slopeP, predictions }
 }
 
 export function assertConfidence(confidence: number): void {
