@@ -29,12 +29,17 @@ const emulsion = reference<Emulsion>('emulsion')
 describe('heat', () => {
   it('mean kinetic temperature: Haynes 1971 with USP <1160> constants', () => {
     const { series } = reference<{
-      series: { temps: number[]; arith: number; 'mkt_R_8.314462618': number }[]
+      series: ({ temps: number[]; arith: number } & Record<`mkt_${string}`, number>)[]
     }>('mean-kinetic-temperature')
-    for (const { temps, arith, 'mkt_R_8.314462618': expected } of series) {
+    for (const { temps, arith, ...expected } of series) {
       const found = mkt({ temperaturesC: temps })
-      expectDigits(found.mktC, expected, 12)
+      expectDigits(found.mktC, expected['mkt_R_8.314462618']!, 12)
       expectDigits(found.meanC, arith, 12)
+      for (const deltaHkJ of [42, 125, 250]) {
+        expectDigits(mkt({ temperaturesC: temps, deltaHkJ }).mktC, expected[`mkt_dH_${deltaHkJ}kJ`]!, 12)
+      }
+      // ΔH/R of 10,000 K exactly, as USP prints it.
+      expectDigits(mkt({ temperaturesC: temps, deltaHkJ: 83.14462618 }).mktC, expected.mkt_dHR_10000!, 12)
     }
   })
 
@@ -136,7 +141,7 @@ describe('emulsion', () => {
     expectDigits(closestPacking, emulsion.closestPacking.value, 14)
   })
 
-  it('internal phase by volume', () => {
+  it('internal phase by volume (arithmetic, no source)', () => {
     const line = (percent: number, density: number, internal: boolean) => ({ percent, density, internal })
     const found = phaseFraction({ lines: [line(80, 1, true), line(20, 0.8, false)] })
     // 80 mL in 80 + 25 mL.
@@ -175,7 +180,7 @@ describe('emulsion', () => {
     expect(droplets({ diametersUm: [4, 4] })).toEqual({ d10: 4, d32: 4, d43: 4, d50v: 4, span: 0 })
   })
 
-  it('jars and grams of a study', () => {
+  it('jars and grams of a study (arithmetic, no source)', () => {
     const station = {
       name: '45 °C',
       timePoints: [1, 2, 4, 8],
@@ -228,7 +233,7 @@ describe('colour', () => {
 })
 
 describe('viscosity and separation', () => {
-  it('computes from torque and spindle, and doubts torque outside 10 to 100 %', () => {
+  it('computes from torque and spindle, and doubts torque outside 10 to 100 % (arithmetic, no source)', () => {
     expect(viscosity({ torquePercent: 62, factor: 1000 })).toEqual({
       mPas: 62000,
       fullScalemPas: 100000,

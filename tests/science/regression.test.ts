@@ -14,7 +14,14 @@ type DataSet = {
 type Nist = {
   datasets: DataSet[]
   norrisLimits: {
-    points: { x: number; fit: string; ci95_two_sided: [string, string]; pi95_two_sided?: [string, string] }[]
+    points: {
+      x: number
+      fit: string
+      ci95_two_sided: [string, string]
+      pi95_two_sided?: [string, string]
+      lower95_one_sided: string
+      upper95_one_sided: string
+    }[]
   }
 }
 type Quantiles = {
@@ -46,6 +53,19 @@ describe('regression against the certified values of NIST StRD', () => {
       expectDigits(predictions[i]!.mean, Number(point.fit), 9)
       expectDigits(predictions[i]!.meanLow, Number(point.ci95_two_sided[0]), 9)
       expectDigits(predictions[i]!.meanHigh, Number(point.ci95_two_sided[1]), 9)
+      if (point.pi95_two_sided) {
+        expectDigits(predictions[i]!.newLow, Number(point.pi95_two_sided[0]), 9)
+        expectDigits(predictions[i]!.newHigh, Number(point.pi95_two_sided[1]), 9)
+      }
+    })
+  })
+
+  it('gives the one-sided limits of Norris by two-sided ones at 90 %', () => {
+    const points = nist.norrisLimits.points
+    const { predictions } = regression({ x, y: norris.y, at: points.map((p) => p.x), confidence: 0.9 })
+    points.forEach((point, i) => {
+      expectDigits(predictions[i]!.meanLow, Number(point.lower95_one_sided), 9)
+      expectDigits(predictions[i]!.meanHigh, Number(point.upper95_one_sided), 9)
     })
   })
 
@@ -57,6 +77,8 @@ describe('regression against the certified values of NIST StRD', () => {
     const shifted = regression({ x: far.map((v) => v + 1e8), y: y.map((v) => v + 1e8) })
     expectDigits(shifted.slope, near.slope, 9)
     expectDigits(shifted.residualSd, near.residualSd, 9)
+    expectDigits(shifted.slopeSe, near.slopeSe, 9)
+    expectDigits(shifted.r2, near.r2!, 9)
   })
 
   it('gives Pontius to 7 digits by general least squares', () => {

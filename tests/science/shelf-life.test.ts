@@ -71,6 +71,22 @@ describe('shelf life by the method of ICH Q1E (2003) Appendix B, figures from R 
     expectDigits(shelfLife(inputOf(sets.E, 'increasing')).crossing, crossings.upper_limit_one_sided!, 10)
   })
 
+  it('gives every other tabulated crossing: separate lines of equal batches, one line of unequal ones, one-sided too', () => {
+    const crossing = (set: QSet, direction: ShelfLifeInput['direction'], poolingAlpha: number) =>
+      shelfLife({ ...inputOf(set, direction), limit: { lower: set.limits.lower! }, poolingAlpha }).crossing
+    for (const [set, model, alpha] of [
+      [sets.A, 'separate_pooled_mse', 1],
+      [sets.A, 'pooled', 0],
+      [sets.C, 'separate_pooled_mse', 1],
+      [sets.C, 'pooled', 0],
+      [sets.E, 'pooled', 0.25],
+    ] as const) {
+      const expected = set.shortest_crossing[model]!
+      expectDigits(crossing(set, 'decreasing', alpha), expected.lower_limit_one_sided!, 10)
+      expectDigits(crossing(set, 'either', alpha), expected.lower_limit_two_sided!, 10)
+    }
+  })
+
   it('supports nothing where the bound is outside at time 0', () => {
     const found = shelfLife(inputOf(sets.H, 'decreasing'))
     expect(found.crossing).toBe(0)
