@@ -3,7 +3,9 @@
 import type { Draft, Slot } from '@/components/bench/draft'
 import { JarRuler } from '@/components/bench/jar-ruler'
 import { FieldBand, HollowDot } from '@/components/bench/value-panel'
+import { layersFacts } from '@/components/bench/value-facts'
 import { bandText, type Verdict } from '@/components/bench/verdict'
+import { FigureDetails } from '@/components/ui/figure-details'
 import { StandingMark } from '@/components/marks/standing-mark'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 import { readTyped } from '@/lib/reading/schema/typed'
@@ -60,8 +62,20 @@ export function LayersPanel({ jar, slots, draft, verdicts, at, onPick, onText }:
         </p>
         <div className="flex items-center justify-between gap-4">
           <p className={`text-44 font-700 leading-none sm:text-64 ${isOut ? 'text-alarm' : ''}`}>
-            {verdict?.state === 'value' ? verdict.value.toFixed(1) : '–'}
-            <span className="text-24 sm:text-36"> %</span>
+            {verdict?.state === 'value' ? (
+              <FigureDetails
+                figure={`${verdict.value.toFixed(1)} %`}
+                facts={() => layersFacts(verdict.value, fill, mm(top), mm(bottom))}
+                density="bench"
+              >
+                {verdict.value.toFixed(1)}
+                <span className="text-24 sm:text-36"> %</span>
+              </FigureDetails>
+            ) : (
+              <>
+                –<span className="text-24 sm:text-36"> %</span>
+              </>
+            )}
           </p>
           {verdict?.state === 'value' ? (
             <p className={`flex items-end gap-3 text-24 font-650 sm:text-30 ${isOut ? 'text-alarm' : ''}`}>

@@ -4,9 +4,13 @@ import { useEffect, useRef, type ReactNode } from 'react'
 import { instrumentKind } from '@/components/bench/day-instrument'
 import type { Slot } from '@/components/bench/draft'
 import { bandText, slotLabel, slotUnit, type Verdict } from '@/components/bench/verdict'
+import { torqueFacts } from '@/components/bench/value-facts'
 import { BandBar } from '@/components/marks/band-bar'
+import { FigureDetails } from '@/components/ui/figure-details'
 import { afterKey, NumberPad } from '@/components/ui/number-pad'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
+import type { FigureFacts } from '@/lib/science/methods/method'
+import { readTyped } from '@/lib/reading/schema/typed'
 import { dayText, figure } from '@/lib/report/rules'
 
 type Props = {
@@ -78,9 +82,14 @@ export function ValuePanel({
               <p
                 className={`text-24 font-650 sm:text-30 ${verdict.state === 'value' && verdict.isOut ? 'text-alarm' : ''}`}
               >
-                {verdict.state === 'value' && slot.kind !== 'number'
-                  ? `${figure(field.attribute, verdict.value)} ${field.unit}`
-                  : ' '}
+                {verdict.state === 'value' && slot.kind !== 'number' ? (
+                  <Computed
+                    text={`${figure(field.attribute, verdict.value)} ${field.unit}`}
+                    facts={slot.kind === 'torque' ? torqueFacts(field, readTyped(text) ?? 0) : null}
+                  />
+                ) : (
+                  ' '
+                )}
               </p>
               <p className="text-17">
                 {last && last.value !== null ? (
@@ -133,6 +142,11 @@ export function ValuePanel({
       </NumberPad>
     </div>
   )
+}
+
+/** What the number comes to; what it is computed from is asked beside the number being typed, never in its way. */
+function Computed({ text, facts }: { text: string; facts: FigureFacts | null }) {
+  return facts ? <FigureDetails figure={text} facts={() => facts} density="bench" /> : text
 }
 
 type BandProps = {

@@ -86,7 +86,7 @@ function Plot({
   const left = scale.zero - (isNarrow ? 14 : 22)
   return (
     <section aria-label={input.title} className={`relative pt-2 ${hasTag ? 'pb-10' : 'pb-4'}`}>
-      <div className={isNarrow ? 'pb-2' : 'absolute top-2 left-0 w-[140px]'}>
+      <div className={isNarrow ? 'pb-2' : 'absolute top-2 left-0 z-10 w-[140px]'}>
         <h2 className="text-24 leading-tight font-650">{input.title}</h2>
         <p className="text-14 leading-snug text-soft">
           {input.unit.map((line) => (

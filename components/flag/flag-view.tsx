@@ -5,10 +5,13 @@ import { useRouter } from 'next/navigation'
 import useSWR from 'swr'
 import { FlagMark } from '@/components/marks/flag-mark'
 import { Phrases } from '@/components/study/phrases'
+import { SeriesDetails } from '@/components/study/series-details'
+import { FigureDetails } from '@/components/ui/figure-details'
 import { Heading } from '@/components/ui/heading'
 import type { FlagPage } from '@/lib/flag/queries/one'
 import { flagKeys } from '@/lib/flag/schema'
 import { fetcher } from '@/lib/http/fetcher'
+import { attributeKey } from '@/lib/reading/schema/attributes'
 import { percentOf } from '@/lib/science/percent'
 import { dayIn, spokenDay } from '@/lib/study/rules/calendar'
 import { shownValue, shownWithUnit } from '@/lib/study/rules/words'
@@ -16,9 +19,10 @@ import { AnswerPanel } from './answer-panel'
 import { Comments } from './comments'
 import type { FlagContext } from './flag-context'
 import { flagHeadline, flagSentence } from './flag-headline'
+import { flagFacts } from './flag-facts'
 import { FlagPlot } from './flag-plot'
 import { FlagShelf } from './flag-shelf'
-import { flaggedValue, whole } from './flag-words'
+import { flaggedValue, stationText, whole } from './flag-words'
 import { howRaised, raisedSentence } from './how-raised'
 import { Moved } from './moved'
 import { NextFlag } from './next-flag'
@@ -80,6 +84,12 @@ export function FlagView({ number, context, rights }: Props) {
             <p className="max-w-[62ch] text-15">
               {whole(`Rule: ${how.rule} ${how.numbers} ${raisedSentence(flag, raisedOn)}`)}
             </p>
+            <p className="mt-1 flex flex-wrap gap-x-5 text-15">
+              <FigureDetails figure={`flag ${flag.number}`} facts={() => flagFacts(flag)}>
+                The rule and its numbers
+              </FigureDetails>
+              <OwnSeries flag={flag} />
+            </p>
           </section>
         </div>
         <div className="order-3 min-w-0 md:order-none md:col-start-1 xl:col-start-auto">
@@ -91,6 +101,22 @@ export function FlagView({ number, context, rights }: Props) {
         </aside>
       </div>
     </>
+  )
+}
+
+/** The series that the flag is about, as it stands since the latest reading. */
+function OwnSeries({ flag }: { flag: FlagPage }) {
+  const { batchId, studyStationId, series } = flag
+  const attribute = attributeKey.safeParse(flag.attribute)
+  if (!studyStationId || !series || !attribute.success) return null
+  return (
+    <SeriesDetails
+      code={flag.studyCode}
+      series={{ batchId, studyStationId, attribute: attribute.data }}
+      figure={`${flag.label} at ${stationText(flag)}`}
+    >
+      The series as it stands now
+    </SeriesDetails>
   )
 }
 

@@ -29,7 +29,8 @@ export function FigureDetails({ figure, facts, content, children, density, class
     <Popover.Root open={isOpen} onOpenChange={setOpen}>
       <Popover.Trigger
         aria-label={`What ${figure} is computed from`}
-        className={`figure-details ${density === 'bench' ? 'min-h-16' : 'min-h-6'} ${className ?? ''}`}
+        data-density={density}
+        className={`figure-details ${className ?? ''}`}
       >
         {children ?? figure}
       </Popover.Trigger>
