@@ -18,11 +18,10 @@ export function assessSeries(input: SeriesInput): SeriesFinding {
   const band = toleranceBand(input.tolerance, initial)
   const days = pullDays(input)
   const walk = days.reduce(stepDay, startWalk(input, initial, band))
-  const { points } = walk
+  const { points, counted } = walk
   const rules = walkFindings(walk)
 
-  const latest = points.findLast((point) => point.counted && !point.isInitial) ?? null
-  const counted = points.filter((point) => point.counted)
+  const latest = counted.findLast((point) => !point.isInitial) ?? null
   const fit = fitTrend(counted, input.repeatabilitySd)
   const from = input.initialTime ?? 0
   const trend = fit && {

@@ -1,6 +1,6 @@
 import { assertComputable, assertFinite, assertNumbers, assertPositive, assertSameLength } from './guard'
 import { mean, median } from './mean'
-import { fitLine, predictLine } from './regression'
+import { fitTrend, trendAt, type TrendPoint } from './trend'
 
 export type InstrumentDayStation = { name: string; temperatureC: number; times: number[]; values: number[] }
 
@@ -83,24 +83,24 @@ export function instrumentDay(input: InstrumentDayInput): InstrumentDay {
 
 /** Distance of the day's mean from where the station's earlier readings lead; null where either is missing. */
 function residualAt(station: InstrumentDayStation, at: number, field: string): number | null {
+  const { times, values } = station
   assertFinite(`${field}.temperatureC`, station.temperatureC)
-  assertNumbers(`${field}.times`, station.times, 0)
-  assertNumbers(`${field}.values`, station.values, 0)
-  assertSameLength(`${field}.times`, station.times, `${field}.values`, station.values)
-  const pairs = station.times.map((time, i) => ({ time, value: station.values[i]! }))
-  const today = pairs.filter((pair) => pair.time === at)
-  const earlier = pairs.filter((pair) => pair.time < at).sort((a, b) => a.time - b.time)
+  assertNumbers(`${field}.times`, times, 0)
+  assertNumbers(`${field}.values`, values, 0)
+  assertSameLength(`${field}.times`, times, `${field}.values`, values)
+  const today: number[] = []
+  const earlier: TrendPoint[] = []
+  for (let i = 0; i < times.length; i++) {
+    if (times[i] === at) today.push(values[i]!)
+    else if (times[i]! < at) earlier.push({ time: times[i]!, mean: values[i]!, replicates: 1 })
+  }
   if (today.length === 0 || earlier.length === 0) return null
-  const value = mean(today.map((pair) => pair.value))
-  return value - expectedAt(earlier, at)
+  return mean(today) - expectedAt(earlier, at)
 }
 
-function expectedAt(earlier: readonly { time: number; value: number }[], at: number): number {
-  const times = new Set(earlier.map((pair) => pair.time))
-  if (times.size < leastForLine) return mean(earlier.slice(-2).map((pair) => pair.value))
-  const fit = fitLine(
-    earlier.map((pair) => pair.time),
-    earlier.map((pair) => pair.value),
-  )
-  return predictLine(fit, at).mean
+function expectedAt(earlier: readonly TrendPoint[], at: number): number {
+  const line = new Set(earlier.map((point) => point.time)).size < leastForLine ? null : fitTrend(earlier, 0)
+  if (line !== null) return trendAt(line, at)
+  const latest = earlier.toSorted((a, b) => a.time - b.time).slice(-2)
+  return mean(latest.map((point) => point.mean))
 }

@@ -44,7 +44,8 @@ function judgeSingle(
   band: Band,
   s: number,
 ): JudgedDay {
-  const found = doubtsOf({ ...only, time: day.time }, only.settled, earlier, band, s)
+  const { mean, replicates, range, settled } = only
+  const found = doubtsOf({ time: day.time, mean, replicates, range }, settled, earlier, band, s)
   if (found.length === 0) return counts(day, only.mean, only.replicates, isBeyondBand(band, only.mean))
   return {
     mean: only.mean,
@@ -106,12 +107,14 @@ export function doubtsOf(
   band: Band,
   s: number,
 ): FoundDoubt[] {
-  const found: [FoundDoubt['rule'], Evidence | null][] = [
-    ['out', beyondOf(band, candidate.mean)],
-    ['jump', jumpOf(earlier, candidate, s)],
-    ['spread', spreadOf(candidate, s)],
-  ]
-  return found.flatMap(([rule, evidence]) => (evidence && !settled.has(rule) ? [{ rule, evidence }] : []))
+  const found: FoundDoubt[] = []
+  const beyond = beyondOf(band, candidate.mean)
+  if (beyond && !settled.has('out')) found.push({ rule: 'out', evidence: beyond })
+  const jump = jumpOf(earlier, candidate, s)
+  if (jump && !settled.has('jump')) found.push({ rule: 'jump', evidence: jump })
+  const spread = spreadOf(candidate, s)
+  if (spread && !settled.has('spread')) found.push({ rule: 'spread', evidence: spread })
+  return found
 }
 
 function counts(day: PullDay, value: number, replicates: number, isConfirmedOut: boolean): JudgedDay {

@@ -2,9 +2,7 @@ import { bandUsed } from './band'
 import type { Band, ColdestStation, Evidence } from './series'
 import { fitTrend, slopePOf, trendAt, type TrendFit, type TrendPoint } from './trend'
 
-export type LeanInput = {
-  /** Counted points in time order, the initial first. */
-  points: readonly (TrendPoint & { day: string | null; isInitial: boolean })[]
+export type LeanFrame = {
   band: Band
   initial: number
   initialTime: number
@@ -12,6 +10,9 @@ export type LeanInput = {
   repeatabilitySd: number
   coldest?: ColdestStation | undefined
 }
+
+/** Counted points in time order, the initial first. */
+export type LeanPoints = readonly (TrendPoint & { day: string | null; isInitial: boolean })[]
 
 export type Lean = { trend: TrendFit; evidence: Evidence }
 
@@ -26,12 +27,13 @@ const sameDay = 0.5 / 7
  * against the coldest other station, which shares instrument and day but not the heat. Without another station
  * that comparison falls away.
  */
-export function leanOf(input: LeanInput): Lean | null {
-  const { points, band, initial, endTime, repeatabilitySd, coldest } = input
+export function leanOf(frame: LeanFrame, points: LeanPoints): Lean | null {
+  const { band, initial, endTime, repeatabilitySd, coldest } = frame
   const own = trendUsesBand(points, band, initial, endTime, repeatabilitySd)
   if (own === null) return null
   const isTwoSided = band.lower !== null && band.upper !== null
-  const versus = isTwoSided && coldest !== undefined ? againstColdest(input, coldest, own.trend) : null
+  const versus =
+    isTwoSided && coldest !== undefined ? againstColdest(frame, points, coldest, own.trend) : null
   if (isTwoSided && coldest !== undefined && versus === null) return null
   return {
     trend: own.trend,
@@ -78,8 +80,13 @@ function trendUsesBand(
 }
 
 /** How the comparison with the coldest other station confirms the trend, or null. */
-function againstColdest(input: LeanInput, coldest: ColdestStation, trend: TrendFit): string | null {
-  const { points, band, initial, initialTime, endTime, repeatabilitySd } = input
+function againstColdest(
+  frame: LeanFrame,
+  points: LeanPoints,
+  coldest: ColdestStation,
+  trend: TrendFit,
+): string | null {
+  const { band, initial, initialTime, endTime, repeatabilitySd } = frame
   const cold = coldest.times.map((time, i) => ({
     time,
     mean: coldest.values[i]!,

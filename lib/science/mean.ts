@@ -3,12 +3,14 @@ import { assertNumbers } from './guard'
 /** Arithmetic mean in two passes: the second takes up what the first lost to rounding. */
 export function mean(values: readonly number[]): number {
   assertNumbers('values', values, 1)
+  const n = values.length
+  if (n === 1) return values[0]!
   let sum = 0
-  for (const value of values) sum += value
-  const first = sum / values.length
+  for (let i = 0; i < n; i++) sum += values[i]!
+  const first = sum / n
   let rest = 0
-  for (const value of values) rest += value - first
-  return first + rest / values.length
+  for (let i = 0; i < n; i++) rest += values[i]! - first
+  return first + rest / n
 }
 
 /** Middle value, or the mean of the two middle ones. */

@@ -25,7 +25,7 @@ export type PullDay = {
 const ownDoubts = new Set(['jump', 'spread', 'out'])
 
 /** Readings by day of pull, in time order; a repeat belongs to the day of the reading it repeats. */
-export function pullDays(input: SeriesInput): PullDay[] {
+export function pullDays(input: Pick<SeriesInput, 'readings' | 'isSeparation'>): PullDay[] {
   const byId = new Map(input.readings.map((reading) => [reading.id, reading]))
   const groups = new Map<string, { reading: SeriesReading; isRepeat: boolean }[]>()
   for (const reading of input.readings) {
@@ -76,17 +76,20 @@ export function isUsable(reading: SeriesReading): boolean {
   return reasonsAgainst(reading).length === 0
 }
 
-function reasonsAgainst(reading: SeriesReading): string[] {
+const noReasons: readonly string[] = []
+
+function reasonsAgainst(reading: SeriesReading): readonly string[] {
   if (reading.isSetAside) return ['set aside with a laboratory cause']
+  if (reading.doubts.length === 0) return noReasons
   return reading.doubts.filter((d) => !d.settled && !ownDoubts.has(d.reason)).map((d) => d.reason)
 }
 
 function measurementOf(readings: SeriesReading[]): Measurement {
-  const values = readings.flatMap((reading) => reading.values)
+  const values = readings.length === 1 ? readings[0]!.values : readings.flatMap((reading) => reading.values)
   return {
     mean: mean(values),
     replicates: values.length,
-    range: Math.max(...values) - Math.min(...values),
+    range: values.length === 1 ? 0 : Math.max(...values) - Math.min(...values),
     readingIds: readings.map((reading) => reading.id),
     settled: new Set(readings.flatMap((r) => r.doubts.filter((d) => d.settled).map((d) => d.reason))),
   }

@@ -124,7 +124,7 @@ export type SeriesFinding = {
   leavesAt: number | null
   leavesAtLow: number | null
   leavesAtHigh: number | null
-  points: SeriesPoint[]
+  points: readonly SeriesPoint[]
   trend: Trend | null
   rules: RuleFinding[]
 }

@@ -1,5 +1,4 @@
 import { tQuantile, tUpperTail } from './distributions'
-import { mean } from './mean'
 import { boundAt, boundMeets, type BoundedLine } from './meeting'
 import { centredSums, residualSquares } from './regression'
 import type { Band, SeriesFinding, Trend } from './series'
@@ -23,14 +22,21 @@ export function fitTrend(
 ): TrendFit | null {
   const n = points.length
   if (n < 3) return null
-  const times = points.map((point) => point.time)
-  const means = points.map((point) => point.mean)
+  const times = new Array<number>(n)
+  const means = new Array<number>(n)
+  let inverseReplicates = 0
+  for (let i = 0; i < n; i++) {
+    const point = points[i]!
+    times[i] = point.time
+    means[i] = point.mean
+    inverseReplicates += 1 / point.replicates
+  }
   const { meanX, meanY, xx, xy } = centredSums(times, means)
   if (!(xx > 0)) return null
 
   const slope = xy / xx
   const residualSd = Math.sqrt(residualSquares(times, means, meanX, meanY, slope) / (n - 2))
-  const floor = floorFactor * repeatabilitySd * Math.sqrt(mean(points.map((point) => 1 / point.replicates)))
+  const floor = floorFactor * repeatabilitySd * Math.sqrt(inverseReplicates / n)
   const sd = Math.max(residualSd, floor)
   return {
     n,

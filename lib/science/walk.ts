@@ -1,4 +1,4 @@
-import { bandUsed, isBeyondBand } from './band'
+import { bandUsed, edgeFrom, isBeyondBand } from './band'
 import { judgeDay, type JudgedDay } from './judge-day'
 import { leanOf, type Lean } from './lean'
 import type { PullDay } from './pull-day'
@@ -6,18 +6,20 @@ import type { Band, RuleFinding, SeriesFinding, SeriesInput, SeriesPoint, Standi
 
 /** Counted times, the initial's included, under which a series is untold. */
 const leastTold = 3
-/** Share of the band from which a reading is flagged though its standing holds. */
-export const edgeFrom = 0.8
 
 /** What every day is judged by. */
-export type WalkFrame = Pick<SeriesInput, 'endTime' | 'repeatabilitySd' | 'initialTime' | 'coldest'> & {
+export type WalkFrame = Pick<SeriesInput, 'endTime' | 'repeatabilitySd' | 'coldest'> & {
   initial: number
+  initialTime: number
   band: Band
 }
 
 /** A series as it stood after its latest day. Never changed: each step gives a new one, so a day can be tried. */
-export type Walk = WalkFrame & {
+export type Walk = {
+  frame: WalkFrame
   points: readonly SeriesPoint[]
+  /** Of these, the ones that count. */
+  counted: readonly SeriesPoint[]
   /** What the days themselves found: doubts and runs outside. */
   rules: readonly RuleFinding[]
   standing: Standing
@@ -35,14 +37,11 @@ export function startWalk(
   band: Band,
 ): Walk {
   const { endTime, repeatabilitySd, initialTime = 0, coldest } = input
+  const first = initialPoint(initialTime, initial, input.initial.length)
   return {
-    endTime,
-    repeatabilitySd,
-    initialTime,
-    coldest,
-    initial,
-    band,
-    points: [initialPoint(initialTime, initial, input.initial.length)],
+    frame: { endTime, repeatabilitySd, initialTime, coldest, initial, band },
+    points: [first],
+    counted: [first],
     rules: [],
     standing: 'untold',
     lean: null,
@@ -54,16 +53,16 @@ export function startWalk(
 
 /** Judges a day from what came before it, and keeps since when a finding has held without a break. */
 export function stepDay(walk: Walk, day: PullDay): Walk {
-  const { band, initial, repeatabilitySd } = walk
-  const earlier = walk.points.filter((point) => point.counted)
-  const judged = judgeDay(day, earlier, band, repeatabilitySd)
+  const { frame } = walk
+  const { band, initial, repeatabilitySd } = frame
+  const judged = judgeDay(day, walk.counted, band, repeatabilitySd)
   const point = pointOf(day, judged, isBeyondBand(band, judged.mean), walk.standing)
   const points = [...walk.points, point]
-  const rules = [...walk.rules, ...judged.rules]
+  const rules = judged.rules.length > 0 ? [...walk.rules, ...judged.rules] : walk.rules
   if (!judged.counted) return { ...walk, points, rules }
 
-  const seen = [...earlier, point]
-  const lean = leanOf({ ...walk, points: seen, initialTime: walk.initialTime ?? 0 })
+  const counted = [...walk.counted, point]
+  const lean = leanOf(frame, counted)
   const leanSince = lean !== null && walk.lean === null ? day.time : walk.leanSince
   const used = bandUsed(band, initial, point.mean)
   const isAtEdge = used !== null && used >= edgeFrom && !judged.isConfirmedOut
@@ -73,12 +72,13 @@ export function stepDay(walk: Walk, day: PullDay): Walk {
     ? 'out'
     : lean
       ? 'leaning'
-      : seen.length >= leastTold
+      : counted.length >= leastTold
         ? 'steady'
         : 'untold'
   return {
-    ...walk,
+    frame,
     points,
+    counted,
     rules: withRun(rules, walk.out, out),
     standing: point.standing,
     lean,
