@@ -25,6 +25,7 @@ const kept = (want: WantedFlag, more: Partial<FrameFlag> = {}): FrameFlag => ({
   settles: null,
   closedBy: null,
   wants: null,
+  raisedAt: '2026-04-13T09:00:00.000Z',
   ...more,
 })
 const reconcile = (flags: FrameFlag[], wanted: WantedFlag[], only: string[] | null = null) =>

@@ -145,6 +145,7 @@ describe('doubts', () => {
       instrumentId: null,
       onDay: null,
       atWeeks: 1,
+      raisedAt: doubted.recordedAt,
       state: 'closed',
       settles,
       closedBy: 'p',
@@ -166,6 +167,47 @@ describe('doubts', () => {
       { instrumentId: 'other', attribute: 'ph', direction: 'high', day: '2026-03-30' },
     ])
     for (const { finding } of assessed) expect(finding.latest).toBeCloseTo(5.5)
+  })
+
+  it('a repeat after the instrument was named counts; one before it was named does not', () => {
+    const places = ['cold', 'room', 'hot']
+    const steady = [1, 2, 3].flatMap((weeks) =>
+      places.map((studyStationId) => reading({ weeks, studyStationId, value: 5.5 })),
+    )
+    const shifted = places.map((studyStationId) =>
+      reading({ weeks: 4, studyStationId, value: 5.9, pullJarId: `off ${studyStationId}` }),
+    )
+    const hour = 1 / 168
+    const again = (weeks: number, value: number) =>
+      reading({ weeks, value, repeatOf: 'off hot', dueOn: shifted[2]!.dueOn })
+    const named: Frame['flags'][number] = {
+      id: 'f',
+      number: 1,
+      batchId: 'b',
+      studyStationId: null,
+      attribute: 'ph',
+      rule: 'common shift',
+      level: 'doubt',
+      readingId: null,
+      instrumentId: 'meter',
+      onDay: '2026-03-30',
+      atWeeks: 4,
+      raisedAt: new Date(Date.parse(startedAt) + (4 + 2 * hour) * weekMs).toISOString(),
+      state: 'open',
+      settles: null,
+      closedBy: null,
+      wants: null,
+    }
+    const latest = (more: FrameReading[]) => {
+      const { shifted: days, assessed } = assessStudy(
+        frame([...steady, ...shifted, ...more], [named]),
+        new Set(['ph']),
+      )
+      expect(days).toHaveLength(1)
+      return assessed.find(({ unit }) => unit.station.id === 'hot')!.finding.points.at(-1)!
+    }
+    expect(latest([again(4 + hour, 5.91)])).toMatchObject({ counted: false })
+    expect(latest([again(4 + 3 * hour, 5.51)])).toMatchObject({ counted: true, mean: 5.51 })
   })
 })
 

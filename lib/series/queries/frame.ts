@@ -136,6 +136,7 @@ async function listFrameFlags(db: Db | Trx, studyId: string) {
       'instrumentId',
       'onDay',
       'atWeeks',
+      'raisedAt',
       'state',
       'settles',
       'closedBy',

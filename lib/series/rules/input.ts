@@ -2,7 +2,7 @@ import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
 import { mean } from '@/lib/science/mean'
 import { weeksSince } from '@/lib/science/months'
 import { phaseFraction } from '@/lib/science/phase-fraction'
-import { separationDetectionLimit } from '@/lib/science/separation'
+import { rulerPercent, separationDetectionLimit } from '@/lib/science/separation'
 import type { ReadingDoubt, SeriesInput, SeriesReading } from '@/lib/science/series'
 import { dayIn } from '@/lib/study/rules/calendar'
 import type { EntryDoubt, Frame, FrameBatch, FrameFlag, FrameReading, FrameStation } from '../queries/frame'
@@ -77,7 +77,7 @@ export function repeatabilitySd(
   fillHeightMm: number,
 ): number {
   // A ruler reads a millimetre, whatever the jar's height.
-  if (key === 'separation') return 100 / fillHeightMm
+  if (key === 'separation') return rulerPercent(fillHeightMm)
   const { kind, sd, highInternalPhaseSd } = attributeOf(key).repeatability
   const ofMethod = isHighInternalPhase(batch) ? highInternalPhaseSd : sd
   return kind === 'relative' ? ofMethod * Math.abs(initial) : ofMethod

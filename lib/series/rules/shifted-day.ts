@@ -14,12 +14,14 @@ export type ShiftedDay = {
   reason: string
   /** What a person decided about it. */
   settles: 'doubt' | 'reading' | null
+  /** When it was first named: a repeat read after that comes from an instrument that was looked at. Null before. */
+  namedAt: string | null
   atWeeks: number
   direction: 'high' | 'low'
   evidence: InstrumentDay['evidence'] & { median: number | null; direction: string }
 }
 
-type Mark = { unit: Unit; day: string; instrumentId: string | null; value: number }
+type Mark = { unit: Unit; day: string; instrumentId: string | null; value: number; row: FrameReading }
 
 /** Looks at each day in turn; a day found shifted takes no part in what is expected of the later ones. */
 export function shiftedDays(frame: Frame, units: readonly Unit[]): ShiftedDay[] {
@@ -32,8 +34,14 @@ export function shiftedDays(frame: Frame, units: readonly Unit[]): ShiftedDay[] 
         mark.day < day &&
         !found.some((shift) => shift.settles !== 'doubt' && isMarkOf(shift, mark)),
     )
+    const flags = flagsOf(frame, instrumentId, attribute, day)
+    const namedAt = flags[0]?.raisedAt ?? null
     const today = marks.filter(
-      (mark) => mark.unit.attribute === attribute && mark.day === day && mark.instrumentId === instrumentId,
+      (mark) =>
+        mark.unit.attribute === attribute &&
+        mark.day === day &&
+        mark.instrumentId === instrumentId &&
+        !isFreshRepeat(namedAt, mark.row),
     )
     const shift = judge(frame, attribute, day, earlier, today)
     if (shift.level !== 'doubt' || shift.direction === null) continue
@@ -42,7 +50,8 @@ export function shiftedDays(frame: Frame, units: readonly Unit[]): ShiftedDay[] 
       attribute,
       day,
       reason: `the instrument read ${shift.direction} everywhere that day`,
-      settles: settledAs(frame, instrumentId, attribute, day),
+      settles: (flags.findLast((flag) => flag.settles !== null)?.settles as ShiftedDay['settles']) ?? null,
+      namedAt,
       atWeeks: weeksBetween(frame.study.startedAt, day),
       direction: shift.direction,
       evidence: { ...shift.evidence, median: shift.median, direction: shift.direction },
@@ -56,8 +65,14 @@ export function isOnShiftedDay(shift: ShiftedDay, reading: FrameReading, zone: s
     reading.attribute === shift.attribute &&
     reading.instrumentId === shift.instrumentId &&
     reading.studyStationId !== null &&
-    dayIn(zone, reading.measuredAt) === shift.day
+    dayIn(zone, reading.measuredAt) === shift.day &&
+    !isFreshRepeat(shift.namedAt, reading)
   )
+}
+
+/** Read again after the day was named: it counts, and says nothing of how the instrument read before. */
+function isFreshRepeat(namedAt: string | null, reading: FrameReading): boolean {
+  return namedAt !== null && reading.repeatOf !== null && Date.parse(reading.measuredAt) > Date.parse(namedAt)
 }
 
 function judge(frame: Frame, attribute: string, day: string, earlier: Mark[], today: Mark[]): InstrumentDay {
@@ -89,7 +104,7 @@ function marksOf(unit: Unit, zone: string): Mark[] {
     if (reading.isSetAside || reading.doubts.some((doubt) => !doubt.settled)) return []
     const row = unit.jars[index]!.rows[0]!
     const day = dayIn(zone, row.measuredAt)
-    return [{ unit, day, instrumentId: row.instrumentId, value: mean(reading.values) }]
+    return [{ unit, day, instrumentId: row.instrumentId, value: mean(reading.values), row }]
   })
 }
 
@@ -106,23 +121,17 @@ function isMarkOf(shift: ShiftedDay, mark: Mark): boolean {
   return (
     shift.day === mark.day &&
     shift.instrumentId === mark.instrumentId &&
-    shift.attribute === mark.unit.attribute
+    shift.attribute === mark.unit.attribute &&
+    !isFreshRepeat(shift.namedAt, mark.row)
   )
 }
 
-function settledAs(
-  frame: Frame,
-  instrumentId: string,
-  attribute: string,
-  day: string,
-): ShiftedDay['settles'] {
-  const flag = frame.flags.findLast(
+function flagsOf(frame: Frame, instrumentId: string, attribute: string, day: string): Frame['flags'] {
+  return frame.flags.filter(
     (one) =>
       one.rule === commonShift &&
       one.instrumentId === instrumentId &&
       one.attribute === attribute &&
-      one.onDay === day &&
-      one.settles !== null,
+      one.onDay === day,
   )
-  return (flag?.settles as ShiftedDay['settles']) ?? null
 }
