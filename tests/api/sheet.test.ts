@@ -1,10 +1,12 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { GET as curvesRoute } from '@/app/api/studies/[code]/curves/route'
 import { GET as readingsRoute } from '@/app/api/studies/[code]/readings/route'
+import { GET as seriesRoute } from '@/app/api/studies/[code]/series/route'
 import { GET as sheetRoute } from '@/app/api/studies/[code]/sheet/route'
 import { GET as listRoute, POST as startRoute } from '@/app/api/studies/route'
 import { newId } from '@/lib/db/id'
 import { transact } from '@/lib/db/transact'
+import { findTopic } from '@/lib/science/calc/topics'
 import { recomputeSeries } from '@/lib/series/commands'
 import type { Cell } from '@/lib/study/rules/cells'
 import { call } from '@/tests/support/call'
@@ -167,6 +169,45 @@ describe('the sheet', () => {
     const answer = await sheetOf('S-999')
     expect(answer.status).toBe(404)
     expect(answer.body.error.sentence).toMatch(/nothing at this address/)
+  })
+})
+
+describe('what a series is computed from', () => {
+  /** Separation at the hottest station, which has used the most of its band. */
+  const worst = () =>
+    t.db
+      .selectFrom('series')
+      .select(['studyStationId', 'standing', 'used', 'leavesAtWeeks as leavesAt'])
+      .where('studyId', '=', study.id)
+      .where('attribute', '=', 'separation')
+      .where('used', 'is not', null)
+      .orderBy('used', 'desc')
+      .limit(1)
+      .executeTakeFirstOrThrow()
+  const factsOf = async (attribute: string, who = formulator) =>
+    call(seriesRoute, {
+      cookie: who.cookie,
+      params: { code: study.code },
+      query: { batchId: study.batchId, studyStationId: (await worst()).studyStationId, attribute },
+    })
+
+  it('formula, inputs and sources, and through calc where the series stands', async () => {
+    const { body } = await factsOf('separation')
+    const { studyStationId: _, ...kept } = await worst()
+    expect(body.result.toLowerCase()).toBe(kept.standing)
+    expect(body.formula.length).toBeGreaterThan(0)
+    const says = body.inputs.map((input: { says: string }) => input.says)
+    expect(says).toEqual(
+      expect.arrayContaining(['band', 'band used', 'repeatability SD, s', 'rules that fired']),
+    )
+    expect(body.sources.map((source: { mark: string }) => source.mark)).toContain('memory')
+    const topic = await findTopic(body.recheck.topic)
+    expect(topic!.run(body.recheck.input)).toMatchObject(kept)
+  })
+
+  it('is refused for what is no attribute, and not there for a client without the study', async () => {
+    expect((await factsOf('colour of the moon')).status).toBe(422)
+    expect((await factsOf('separation', await t.person('client'))).status).toBe(404)
   })
 })
 
