@@ -1,6 +1,7 @@
 import { Ledger } from '@/components/ui/ledger'
 import type { PlannedAttribute } from '@/lib/protocol/schema'
 import { attributeOf } from '@/lib/reading/schema/attributes'
+import { viscosityFactor } from '@/lib/science/viscosity'
 import { shownValue } from '@/lib/study/rules/words'
 
 /** What is measured, how, and how far it may move. */
@@ -33,7 +34,9 @@ export function AttributeList({ attributes }: { attributes: PlannedAttribute[] }
               <>
                 {row.method}
                 <span className="text-soft">
-                  , {shownValue('viscosity', row.viscosity.spindleConstant / row.viscosity.rpm)} mPa·s a %
+                  ,{' '}
+                  {shownValue('viscosity', viscosityFactor(row.viscosity.spindleConstant, row.viscosity.rpm))}{' '}
+                  mPa·s a %
                 </span>
               </>
             ) : (

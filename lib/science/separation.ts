@@ -31,8 +31,13 @@ export function separation({ totalMm, topMm, bottomMm }: LayerHeights): Separati
   })
 }
 
+/** What a ruler's millimetre is in percent of fill height [practice]. */
+export function rulerPercent(totalMm: number): number {
+  assertPositive('totalMm', totalMm)
+  return assertComputable('totalMm', 100 / totalMm)
+}
+
 /** Percent of fill height under which separation is not told apart from none: 1 %, or 1 mm of the ruler [practice]. */
 export function separationDetectionLimit(totalMm: number): number {
-  assertPositive('totalMm', totalMm)
-  return Math.min(100, Math.max(1, 100 / totalMm))
+  return Math.min(100, Math.max(1, rulerPercent(totalMm)))
 }

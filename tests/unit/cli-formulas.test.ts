@@ -26,6 +26,12 @@ describe('no second copy of a formula', () => {
     ],
     ['a mean in a chart', 'components/charts/curve.tsx', mean, 'Call `mean`'],
     ['a mean in a mark', 'components/marks/jar.ts', 'export const m = sum / values.length', 'Call `mean`'],
+    [
+      'a median by its middle',
+      'components/flag/verdict.ts',
+      'export const m = sorted[Math.floor(sorted.length / 2)]',
+      'Call `median`',
+    ],
     ['a mean by name', 'lib/study/rules.ts', 'export function median(x) { return x[1] }', 'second copy'],
     [
       'a fit by name',
@@ -149,6 +155,7 @@ describe('no second copy of a formula', () => {
       'lib/batch/queries.ts',
       'export const q = sql`select count(*), sum(actual_g) from t`',
     ],
+    ['half a text', 'lib/auth/password.ts', 'export const half = bare.slice(0, bare.length / 2)'],
     ['hours', 'lib/auth/token.ts', 'export const hours = { invitation: 7 * 24 }'],
     ['what the demo invents', 'lib/cli/seed/noise.ts', 'export const n = Math.sqrt(-2 * Math.log(u))'],
   ]

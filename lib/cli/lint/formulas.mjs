@@ -50,6 +50,17 @@ const tells = [
   },
   {
     finds: {
+      BinaryExpression: (node, file) =>
+        node.operator === '/' &&
+        isCount(node.left) &&
+        node.right.value === 2 &&
+        isIndex(node) &&
+        !draws(file),
+    },
+    instead: 'The middle of a list is a median. Call `median` of lib/science/mean.',
+  },
+  {
+    finds: {
       FunctionDeclaration: (node) => statistics.test(node.id?.name ?? ''),
       VariableDeclarator: (node) =>
         ['ArrowFunctionExpression', 'FunctionExpression'].includes(node.init?.type) &&
@@ -90,6 +101,13 @@ const isMember = (node, object, names) =>
 const isSqlTag = (tag) => nameOf(tag) === 'sql' || nameOf(tag.expression) === 'sql'
 const isCount = (node) => node.type === 'MemberExpression' && ['length', 'size'].includes(node.property.name)
 const isMeasured = (node) => node.type !== 'Literal'
+
+/** Whether a number, rounded or not, says which of a list is taken. */
+function isIndex(node) {
+  const { parent } = node
+  if (parent.type === 'MemberExpression') return parent.computed && parent.property === node
+  return parent.type === 'CallExpression' && nameOf(parent.callee.object) === 'Math' && isIndex(parent)
+}
 
 /** Whether a sum made on the spot stands in an expression. */
 function holdsSum(node) {
