@@ -67,7 +67,7 @@ export default async function NewCasePage({ searchParams }: Props) {
       <div className="mt-6 grid grid-cols-1 gap-x-14 gap-y-8 lg:grid-cols-[minmax(0,1fr)_332px]">
         <div className="flex min-w-0 flex-col gap-8">
           <HowFar content={computed} months={months} />
-          <CarryTable content={computed} />
+          <CarryTable content={computed} when="Not begun yet, computed as it is shown." />
           <Section title="What weakens it">
             <Weakens weakens={computed.weakens} />
           </Section>
