@@ -40,6 +40,7 @@ export function FlagList({ shown, rights, timeZone }: Props) {
         }
         headline={<Headline flags={flags} />}
         sentence={sentence(flags, timeZone)}
+        acts={<LinkButton href="/flags/trust">How far to trust a flag</LinkButton>}
         tabsLabel="Open, answered and closed flags"
         tabs={flagStates.map((state) => ({
           href: flagsAddress({ ...shown, state }),
