@@ -41,7 +41,7 @@ test('formula: the internal phase is made again to the last digit', async ({ pag
   const by = page.getByText('by volume', { exact: false }).getByRole('button', { name: /^What [\d.]+ % is/ })
   await by.first().click()
   const panel = page.getByRole('dialog', { name: /^What [\d.]+ % is computed from$/ })
-  await expect(panel).toContainText('closest packing')
+  await expect(panel).toContainText('packed closest')
   await expect(panel).toContainText('Aqua')
   await expect(panel.getByRole('list', { name: 'Sources' })).toContainText('handbook')
   const { internalVolumePercent } = await recheck(panel)
