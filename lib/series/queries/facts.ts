@@ -39,6 +39,6 @@ export async function getSeriesFacts(
     input: found.input,
     finding: found.finding,
     calculation: driftCalculation(found.input),
-    when: `Computed ${minuteText(kept.computedAt, frame.study.zone)}, when its latest reading was saved.`,
+    when: `Series computed ${minuteText(kept.computedAt, frame.study.zone)}.`,
   })
 }
