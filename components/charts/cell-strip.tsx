@@ -1,5 +1,6 @@
 'use client'
 
+import type { ReactNode } from 'react'
 import { BandBar } from '../marks/band-bar'
 import { bandScale } from '../marks/band-bar-shapes'
 import { useWidth } from './use-width'
@@ -26,10 +27,12 @@ export type CellStripProps = {
   note: string
   href?: string
   attributes: StripAttribute[]
+  /** What stands in place of a value's text, such as the text with its details. */
+  textAs?: (attribute: StripAttribute) => ReactNode
 }
 
 /** The jar that is picked on the sheet: each attribute as a level within its band. */
-export function CellStrip({ code, note, href, attributes }: CellStripProps) {
+export function CellStrip({ code, note, href, attributes, textAs = ({ text }) => text }: CellStripProps) {
   return (
     <div
       className="flex flex-wrap gap-x-4 gap-y-4 bg-recess py-4 shadow-[0_0_0_100vmax_var(--recess)] [clip-path:inset(0_-100vmax)]"
@@ -50,16 +53,16 @@ export function CellStrip({ code, note, href, attributes }: CellStripProps) {
       </div>
       <ul className="grid min-w-0 flex-1 basis-80 grid-cols-[repeat(auto-fit,minmax(150px,1fr))] gap-x-7 gap-y-4">
         {attributes.map((attribute) => (
-          <Level key={attribute.key} attribute={attribute} />
+          <Level key={attribute.key} attribute={attribute} shown={textAs(attribute)} />
         ))}
       </ul>
     </div>
   )
 }
 
-function Level({ attribute }: { attribute: StripAttribute }) {
+function Level({ attribute, shown }: { attribute: StripAttribute; shown: ReactNode }) {
   const [box, width] = useWidth<HTMLLIElement>(168)
-  const { name, text, isOut, lowerText, upperText, lower, upper, initial, last, now } = attribute
+  const { name, isOut, lowerText, upperText, lower, upper, initial, last, now } = attribute
   const bar = { lower, upper, initial, last, now }
   const scale = bandScale({ ...bar, width })
   const edges = [
@@ -70,7 +73,7 @@ function Level({ attribute }: { attribute: StripAttribute }) {
     <li ref={box} className="min-w-0">
       <div className="flex items-baseline justify-between gap-2 whitespace-nowrap">
         <span className="truncate text-13 text-soft">{name}</span>
-        <span className={`text-15 ${isOut ? 'font-750 text-alarm' : 'font-600'}`}>{text}</span>
+        <span className={`text-15 ${isOut ? 'font-750 text-alarm' : 'font-600'}`}>{shown}</span>
       </div>
       <BandBar {...bar} width={width} title={bandSentence(attribute)} />
       <div className="relative h-4 text-13" aria-hidden>

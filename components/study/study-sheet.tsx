@@ -10,7 +10,9 @@ import { namedJar } from '@/lib/jar/rules'
 import type { SheetPage, SheetShelf } from '@/lib/study/queries/sheet'
 import { spokenDay } from '@/lib/study/rules/calendar'
 import { studyKeys } from '@/lib/study/schema'
+import type { AttributeKey } from '@/lib/reading/schema/attributes'
 import { BatchTabs } from './batch-tabs'
+import { SeriesDetails } from './series-details'
 import { sheetProps, stripOf } from './sheet-props'
 import { StudyActs } from './study-acts'
 import { StudyHeading, type StudyRights } from './study-heading'
@@ -73,12 +75,16 @@ export function StudySheet({
           />
         ) : null}
       </div>
-      {shelf && selected ? <Strip sheet={sheet} shelf={shelf} weeks={selected.weeks} /> : null}
+      {shown && shelf && selected ? (
+        <Strip sheet={sheet} batchId={shown.id} shelf={shelf} weeks={selected.weeks} />
+      ) : null}
     </>
   )
 }
 
-function Strip({ sheet, shelf, weeks }: { sheet: SheetPage; shelf: SheetShelf; weeks: number }) {
+type StripProps = { sheet: SheetPage; batchId: string; shelf: SheetShelf; weeks: number }
+
+function Strip({ sheet, batchId, shelf, weeks }: StripProps) {
   const cell = shelf.cells.find((one) => one.weeks === weeks)
   if (!cell) return null
   const note = [
@@ -92,6 +98,15 @@ function Strip({ sheet, shelf, weeks }: { sheet: SheetPage; shelf: SheetShelf; w
         code={cell.code ? namedJar(cell.code, shelf.station) : 'initial'}
         note={note}
         attributes={stripOf(shelf, weeks)}
+        textAs={({ key, name, text }) => (
+          <SeriesDetails
+            code={sheet.study.code}
+            series={{ batchId, studyStationId: shelf.station.id, attribute: key as AttributeKey }}
+            figure={`${name} ${text}`}
+          >
+            {text}
+          </SeriesDetails>
+        )}
       />
     </div>
   )
