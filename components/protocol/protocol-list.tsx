@@ -81,7 +81,8 @@ export function ProtocolList({ protocols, mayWrite }: { protocols: ProtocolRow[]
             {
               key: 'state',
               title: 'stands at',
-              cell: (row) => `version ${row.number}, ${row.state}`,
+              cell: (row) =>
+                `version ${row.number}, ${row.state === 'locked' ? 'locked, not approved' : row.state}`,
             },
             { key: 'studies', title: 'studies', align: 'right', cell: (row) => row.studies },
           ]}

@@ -14,15 +14,24 @@ import { send } from '@/lib/http/fetcher'
 import type { ProtocolPage } from '@/lib/protocol/queries'
 import { jarsOfPlan, missingInPlan, weeksOfPlan } from '@/lib/protocol/rules/plan'
 import { protocolKeys, type ProtocolPlan } from '@/lib/protocol/schema'
+import { spokenDay } from '@/lib/study/rules/calendar'
 import { capital, counted } from '@/lib/study/rules/words'
+import { ApproveVersion } from './approve-version'
 import { AttributeList } from './attribute-list'
 import { PlanEditor } from './plan-editor'
 import { PlanGrid } from './plan-grid'
 
-type Props = { protocol: ProtocolPage; number: number | null; mayWrite: boolean; mayStart: boolean }
+type Props = {
+  protocol: ProtocolPage
+  number: number | null
+  mayWrite: boolean
+  mayStart: boolean
+  /** Who looks, where they may approve. */
+  approver: string | null
+}
 
 /** One version of a protocol: its shelves, what is measured, and who follows it. */
-export function ProtocolView({ protocol, number, mayWrite, mayStart }: Props) {
+export function ProtocolView({ protocol, number, mayWrite, mayStart, approver }: Props) {
   const router = useRouter()
   const shown = protocol.versions.find((one) => one.number === number) ?? protocol.versions[0]!
   const [isEditing, setIsEditing] = useState(false)
@@ -49,7 +58,7 @@ export function ProtocolView({ protocol, number, mayWrite, mayStart }: Props) {
         crumb={
           <>
             <Link href="/protocols">Protocols</Link>, {protocol.code}, version {shown.number},{' '}
-            {shown.state === 'draft' ? 'a draft' : 'locked'}
+            {stateWords(shown)}
           </>
         }
         headline={<Headline plan={shown.plan} name={protocol.name} />}
@@ -69,8 +78,11 @@ export function ProtocolView({ protocol, number, mayWrite, mayStart }: Props) {
             {mayWrite && shown.state === 'draft' && !isEditing ? (
               <Button onClick={() => setIsEditing(true)}>Change the plan</Button>
             ) : null}
-            {mayWrite && newest.state === 'locked' ? (
+            {mayWrite && newest.state !== 'draft' ? (
               <Button onClick={begin}>Begin a new version</Button>
+            ) : null}
+            {approver && shown.state !== 'approved' && !isEditing ? (
+              <ApproveVersion code={protocol.code} version={shown} approver={approver} missing={missing} />
             ) : null}
             {mayStart && shown.number === newest.number && !missing ? (
               <LinkButton href={`/studies/new?protocol=${protocol.code}`} kind="primary">
@@ -124,6 +136,11 @@ export function ProtocolView({ protocol, number, mayWrite, mayStart }: Props) {
       </div>
     </>
   )
+}
+
+function stateWords({ state, approvedBy, approvedAt }: ProtocolPage['versions'][number]): string {
+  if (state === 'approved') return `approved by ${approvedBy}, ${spokenDay(approvedAt!)}`
+  return `${state === 'draft' ? 'a draft' : 'locked'}, not approved by QA`
 }
 
 function Headline({ plan, name }: { plan: ProtocolPlan; name: string }) {

@@ -40,6 +40,8 @@ export function StartStudyForm({ offer, batchCode, protocolCode }: Props) {
   const needs = needsOf(offer, draft)
   const short = needs.find((need) => !need.fits)
   const fields = error instanceof ClientError ? error.fields : {}
+  const chosen = offer.protocols.find((one) => one.versionId === draft.protocolVersionId)
+  const isUnapproved = chosen !== undefined && chosen.state !== 'approved'
 
   async function start() {
     setBusy(true)
@@ -105,10 +107,16 @@ export function StartStudyForm({ offer, batchCode, protocolCode }: Props) {
                   }}
                 />
               </div>
+              {isUnapproved ? (
+                <p className="text-15">
+                  QA has not approved this version: a study that starts on it cannot carry a signed shelf
+                  life.
+                </p>
+              ) : null}
               <Field
                 label="Title"
                 value={draft.title}
-                placeholder={offer.protocols.find((one) => one.versionId === draft.protocolVersionId)?.name}
+                placeholder={chosen?.name}
                 onText={(title) => set({ title })}
                 error={fields['title']}
               />

@@ -2,6 +2,7 @@
 
 import Link from 'next/link'
 import type { ReactNode } from 'react'
+import { Button } from '@/components/ui/button'
 import { Heading } from '@/components/ui/heading'
 import type { StudyBatchRow } from '@/lib/study/queries/head'
 import type { ShownStudy } from '@/lib/study/queries/sheet'
@@ -55,18 +56,27 @@ export function StudyHeading({ study, batches, part, rights, headline, sentence,
         <span className="flex flex-wrap items-center gap-x-5">
           {acts}
           <FollowButton code={study.code} isFollowing={study.isFollowing} />
-          {rights.mayPutForward ? (
-            <Link
-              href={`/cases/new?study=${encodeURIComponent(study.code)}`}
-              className="btn"
-              data-kind="link"
-            >
-              Put a shelf-life case forward
-            </Link>
-          ) : null}
+          {rights.mayPutForward ? <CaseLink study={study} /> : null}
         </span>
       }
     />
+  )
+}
+
+/** Off where the study's own protocol bars it; the sheet says why. */
+function CaseLink({ study }: { study: ShownStudy }) {
+  const label = 'Put a shelf-life case forward'
+  if (study.protocolApproval === 'not approved') {
+    return (
+      <Button kind="link" why="Its protocol was not approved when it began.">
+        {label}
+      </Button>
+    )
+  }
+  return (
+    <Link href={`/cases/new?study=${encodeURIComponent(study.code)}`} className="btn" data-kind="link">
+      {label}
+    </Link>
   )
 }
 

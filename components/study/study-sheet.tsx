@@ -16,6 +16,7 @@ import { SeriesDetails } from './series-details'
 import { sheetProps, stripOf } from './sheet-props'
 import { StudyActs } from './study-acts'
 import { StudyHeading, type StudyRights } from './study-heading'
+import { StudyNotices } from './study-notices'
 
 type Picked = { rowId: string; weeks: number }
 
@@ -49,6 +50,7 @@ export function StudySheet({
         sentence={sheet.finding.sentence}
         acts={rights.mayWrite ? <StudyActs study={study} /> : null}
       />
+      <StudyNotices study={study} />
       {batches.length > 1 ? (
         <BatchTabs code={code} path="" batches={batches} shown={shown?.code ?? ''} />
       ) : null}

@@ -20,6 +20,7 @@ export const permissions = {
   'batch.write': ['formulator'],
   'protocol.read': lab,
   'protocol.write': ['formulator'],
+  'protocol.approve': ['qa'],
   'study.read': everyone,
   'study.write': ['formulator'],
   'bench.read': lab,

@@ -230,6 +230,7 @@ export interface Jar {
   id: string
   kind: string
   place: number | null
+  setAsideFor: string | null
   shelf: number | null
   state: Generated<string>
   studyId: string
@@ -294,6 +295,8 @@ export interface Protocol {
 }
 
 export interface ProtocolVersion {
+  approvedAt: string | null
+  approvedBy: string | null
   createdAt: Generated<string>
   createdBy: string
   id: string
@@ -467,12 +470,27 @@ export interface Study {
   id: string
   isShared: Generated<boolean>
   plan: unknown
+  protocolApproval: string | null
   protocolVersionId: string
   startedAt: string
   startedOn: string
   state: Generated<string>
   title: string
   version: Generated<number>
+}
+
+export interface StudyAmendment {
+  after: Generated<unknown>
+  before: Generated<unknown>
+  id: string
+  kind: string
+  madeAt: Generated<string>
+  madeBy: string
+  number: number
+  reason: string
+  sentence: string
+  studyId: string
+  studyStationId: string | null
 }
 
 export interface StudyBatch {
@@ -489,12 +507,14 @@ export interface StudyFollower {
 }
 
 export interface StudyStation {
+  endedOn: string | null
   id: string
   isFreezeThaw: Generated<boolean>
   position: number
   stationId: string
   studyId: string
   temperatureC: Numeric | null
+  variant: Generated<string>
   voice: string
 }
 
@@ -569,6 +589,7 @@ export interface DB {
   station: Station
   stationTemperature: StationTemperature
   study: Study
+  studyAmendment: StudyAmendment
   studyBatch: StudyBatch
   studyFollower: StudyFollower
   studyStation: StudyStation

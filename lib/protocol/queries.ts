@@ -50,6 +50,7 @@ export async function getProtocol(db: Db, _actor: Actor, code: string) {
   const versions = await db
     .selectFrom('protocolVersion')
     .innerJoin('person', 'person.id', 'protocolVersion.createdBy')
+    .leftJoin('person as approver', 'approver.id', 'protocolVersion.approvedBy')
     .select([
       'protocolVersion.id',
       'protocolVersion.number',
@@ -57,6 +58,9 @@ export async function getProtocol(db: Db, _actor: Actor, code: string) {
       'protocolVersion.note',
       'protocolVersion.version',
       'protocolVersion.createdAt',
+      'protocolVersion.createdBy',
+      'protocolVersion.approvedAt',
+      'approver.name as approvedBy',
       'person.initials as madeBy',
     ])
     .select((eb) => eb.ref('protocolVersion.plan').$castTo<ProtocolPlan>().as('plan'))

@@ -103,6 +103,9 @@ export const writtenPlan = z.object({
 })
 export type WrittenPlan = z.input<typeof writtenPlan>
 
+/** QA's approval of a version as it stands: the version seen is the version approved. */
+export const approvedVersion = z.object({ version: z.number().int().positive() })
+
 export const protocolAddress = z.object({ code: z.string().max(40) })
 export const protocolVersionAddress = protocolAddress.extend({ number: z.coerce.number().int().positive() })
 
@@ -111,4 +114,6 @@ export const protocolKeys = {
   one: (code: string) => `/api/protocols/${encodeURIComponent(code)}`,
   versions: (code: string) => `/api/protocols/${encodeURIComponent(code)}/versions`,
   version: (code: string, number: number) => `/api/protocols/${encodeURIComponent(code)}/versions/${number}`,
+  approve: (code: string, number: number) =>
+    `/api/protocols/${encodeURIComponent(code)}/versions/${number}/approve`,
 }

@@ -166,6 +166,7 @@ const table: Record<Permission, string> = {
   'batch.write': 'no yes no no no',
   'protocol.read': 'yes yes yes yes no',
   'protocol.write': 'no yes no no no',
+  'protocol.approve': 'no no yes no no',
   'study.read': 'yes yes yes yes yes',
   'study.write': 'no yes no no no',
   'bench.read': 'yes yes yes yes no',

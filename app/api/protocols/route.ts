@@ -1,5 +1,5 @@
 import { read, write } from '@/lib/http/route'
-import { createProtocol } from '@/lib/protocol/commands'
+import { createProtocol } from '@/lib/protocol/commands/write-protocol'
 import { listProtocols } from '@/lib/protocol/queries'
 import { newProtocol } from '@/lib/protocol/schema'
 

@@ -2,7 +2,8 @@ import { newId } from '@/lib/db/id'
 import { weighFilledJar } from '@/lib/jar/commands'
 import { logCycleStep } from '@/lib/cycle/commands'
 import { cycleStep } from '@/lib/cycle/schema'
-import { createProtocol } from '@/lib/protocol/commands'
+import { approveVersion } from '@/lib/protocol/commands/approve-version'
+import { createProtocol } from '@/lib/protocol/commands/write-protocol'
 import { readyMadePlan } from '@/lib/protocol/rules/ready-made'
 import { newProtocol, type ProtocolPlan } from '@/lib/protocol/schema'
 import { startStudy } from '@/lib/study/commands/start-study'
@@ -21,12 +22,15 @@ export type Protocols = Record<
 const quarters = [13, 26, 39, 52, 78, 104]
 
 export async function fillProtocols(filling: Filling): Promise<Protocols> {
-  const { liv } = filling.people
+  const { liv, rune } = filling.people
   const at = daysAgo(filling, 797, 10)
   const make = async (name: string, plan: ProtocolPlan) => {
     const versionId = newId()
-    await filling.act(liv, at, (trx) =>
+    const { code } = await filling.act(liv, at, (trx) =>
       createProtocol(trx, liv, newProtocol.parse({ id: newId(), versionId, name, plan })),
+    )
+    await filling.act(rune, daysAgo(filling, 796, 11), (trx, now) =>
+      approveVersion(trx, rune, { code, number: 1 }, { version: 1 }, now),
     )
     return { id: versionId, plan }
   }

@@ -15,6 +15,7 @@ export async function loadEvidence(db: Db | Trx, actor: Actor, studyId: string) 
   const study = await db
     .selectFrom('study')
     .select(['id', 'code', 'title', 'startedAt', 'startedOn', 'endWeeks', 'plan', 'clientId', 'state'])
+    .select('protocolApproval')
     .where('id', '=', studyId)
     .executeTakeFirst()
   if (!study) throw refuse.notFound('There is no such study.')

@@ -4,6 +4,7 @@ import { isClientOnly, type Actor } from '@/lib/auth/actor'
 import { refuse } from '@/lib/http/errors'
 import { caseStation, computeCase } from '@/lib/shelf-case/rules/build'
 import type { CaseContent } from '@/lib/shelf-case/rules/content'
+import { assertApprovedProtocol } from '@/lib/shelf-case/rules/refusals'
 import { signatureHash, type SignedFacts } from '@/lib/shelf-case/queries/signature'
 import { loadEvidence, loadTemperatures } from '@/lib/shelf-case/queries/evidence'
 
@@ -136,6 +137,7 @@ export function signatureBelongs(
 /** What the study's evidence supports now; the same figures that putting forward would freeze. */
 export async function computeFor(db: Db | Trx, actor: Actor, studyId: string, studyStationId: string | null) {
   const evidence = await loadEvidence(db, actor, studyId)
+  assertApprovedProtocol(evidence.study)
   const station = caseStation(evidence, studyStationId)
   if (!station)
     throw refuse.conflict(

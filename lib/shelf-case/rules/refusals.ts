@@ -31,6 +31,14 @@ export function assertProposal(proposal: CaseProposal, supportedMonths: number):
     )
 }
 
+/** What carries a shelf life was planned with QA: a protocol approved afterwards does not mend the start. */
+export function assertApprovedProtocol(study: { code: string; protocolApproval: string | null }): void {
+  if (study.protocolApproval !== 'not approved') return
+  throw refuse.conflict(
+    `Study ${study.code} began on a version of its protocol that QA had not approved, so it cannot carry a signed shelf life. Start the study that is to carry one on an approved version.`,
+  )
+}
+
 export function assertState(code: string, state: CaseState, wanted: CaseState, act: string): void {
   if (state === wanted) return
   throw refuse.conflict(`Case ${code} is ${state}, so it cannot be ${act}. ${nextAct[state]}`)

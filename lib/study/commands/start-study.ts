@@ -76,6 +76,7 @@ export async function startStudy(
       title: input.title,
       protocolVersionId: version.id,
       plan: JSON.stringify(plan),
+      protocolApproval: version.state === 'approved' ? 'approved' : 'not approved',
       clientId: input.clientId,
       isShared: input.isShared,
       startedAt,

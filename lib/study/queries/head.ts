@@ -27,6 +27,7 @@ export async function getStudyHead(db: Db, actor: Actor, code: string) {
       'study.isShared',
       'study.clientId',
       'study.version',
+      'study.protocolApproval',
       'study.createdBy',
       'protocol.code as protocolCode',
       'protocol.name as protocolName',

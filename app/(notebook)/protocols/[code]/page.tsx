@@ -27,6 +27,7 @@ export default async function ProtocolPage({ params, searchParams }: Props) {
       number={Number.isInteger(number) ? number : null}
       mayWrite={may(actor, 'protocol.write')}
       mayStart={may(actor, 'study.write')}
+      approver={may(actor, 'protocol.approve') ? actor.personId : null}
     />
   )
 }

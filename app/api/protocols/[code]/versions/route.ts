@@ -1,5 +1,5 @@
 import { write } from '@/lib/http/route'
-import { beginProtocolVersion } from '@/lib/protocol/commands'
+import { beginProtocolVersion } from '@/lib/protocol/commands/write-protocol'
 import { newProtocolVersion, protocolAddress } from '@/lib/protocol/schema'
 
 export const POST = write({

@@ -1,5 +1,5 @@
 import { write } from '@/lib/http/route'
-import { writePlan } from '@/lib/protocol/commands'
+import { writePlan } from '@/lib/protocol/commands/write-protocol'
 import { protocolVersionAddress, writtenPlan } from '@/lib/protocol/schema'
 
 export const PUT = write({

@@ -39,7 +39,7 @@ export async function beginProtocolVersion(
   code: string,
   input: z.output<typeof newProtocolVersion>,
 ) {
-  const newest = await lockedVersions(trx, code)
+  const newest = await newestVersion(trx, code)
   if (newest.id === input.id) return { id: newest.id, number: newest.number }
   if (newest.state === 'draft') {
     throw refuse.conflict(
@@ -76,8 +76,9 @@ export async function writePlan(
     .executeTakeFirst()
   if (!draft) throw refuse.notFound()
   const what = `version ${address.number} of ${address.code}`
-  if (draft.state === 'locked') {
-    throw refuse.conflict(`A study follows ${what}, so it is locked. Begin a new version to change the plan.`)
+  if (draft.state !== 'draft') {
+    const why = draft.state === 'approved' ? `QA approved ${what}` : `A study follows ${what}`
+    throw refuse.conflict(`${why}, so it is locked. Begin a new version to change the plan.`)
   }
   if (draft.version !== input.version) {
     await expectOne(trx, undefined, { table: 'protocol_version', id: draft.id, thing: what })
@@ -97,7 +98,7 @@ export async function writePlan(
   return { version: input.version + 1 }
 }
 
-async function lockedVersions(trx: Trx, code: string) {
+async function newestVersion(trx: Trx, code: string) {
   const newest = await trx
     .selectFrom('protocolVersion')
     .innerJoin('protocol', 'protocol.id', 'protocolVersion.protocolId')
