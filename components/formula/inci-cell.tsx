@@ -3,7 +3,7 @@
 import { useId, useState, type KeyboardEvent } from 'react'
 import useSWR from 'swr'
 import { fetcher } from '@/lib/http/fetcher'
-import type { IngredientRow } from '@/lib/ingredient/queries'
+import type { FoundIngredient, IngredientRow } from '@/lib/ingredient/queries'
 import { ingredientsKey } from '@/lib/ingredient/schema'
 import { Cell } from './cell'
 
@@ -18,14 +18,14 @@ type Props = {
   onAdd: () => void
 }
 
-/** Search as one types; a name that is not there yet is added in place. */
+/** Search as one types, in INCI names, synonyms and suppliers' names; one that is not there yet is added in place. */
 export function InciCell({ row, label, value, isKnown, error, onText, onPick, onAdd }: Props) {
   const listId = useId()
   const [isOpen, setIsOpen] = useState(false)
   const [at, setAt] = useState(0)
   const typed = value.trim()
   const isAsking = isOpen && typed.length > 0
-  const { data } = useSWR<IngredientRow[]>(isAsking ? ingredientsKey(typed) : null, fetcher, {
+  const { data } = useSWR<FoundIngredient[]>(isAsking ? ingredientsKey(typed) : null, fetcher, {
     keepPreviousData: true,
     dedupingInterval: 60_000,
   })
@@ -87,7 +87,14 @@ export function InciCell({ row, label, value, isKnown, error, onText, onPick, on
       >
         {found.map((one, index) => (
           <Choice key={one.id} id={`${listId}-${index}`} isAt={index === at} onChoose={() => choose(index)}>
-            <span className="min-w-0 flex-1">{one.inciName}</span>
+            <span className="min-w-0 flex-1">
+              {one.inciName}
+              {one.match ? (
+                <span className="block text-13 text-soft">
+                  {one.match.in === 'synonym' ? 'also' : 'supplier’s'} {one.match.text}
+                </span>
+              ) : null}
+            </span>
             <span className="text-13 text-soft">{one.function}</span>
           </Choice>
         ))}

@@ -10,6 +10,7 @@ const entries: Entry[] = [
   { href: '/bench', label: 'Bench', permission: 'bench.read' },
   { href: '/studies', label: 'Studies', permission: 'study.read' },
   { href: '/formulas', label: 'Formulas', permission: 'formula.read' },
+  { href: '/ingredients', label: 'Ingredients', permission: 'formula.read' },
   { href: '/batches', label: 'Batches', permission: 'batch.read' },
   { href: '/protocols', label: 'Protocols', permission: 'protocol.read' },
   { href: '/stations', label: 'Stations', permission: 'station.read' },

@@ -33,8 +33,65 @@ export interface Batch {
   state: Generated<string>
   testedAt: string | null
   testedBy: string | null
+  tolerancePercent: Generated<Numeric>
   version: Generated<number>
   yieldG: Numeric | null
+}
+
+export interface BatchJar {
+  batchId: string
+  filledAt: Generated<string>
+  filledBy: string
+  grossG: Numeric
+  id: string
+  isFromPaper: Generated<boolean>
+  note: Generated<string>
+  number: number
+  reason: Generated<string>
+  recordedAt: Generated<string>
+  supersedes: string | null
+  tareG: Numeric
+  torqueNm: Numeric | null
+}
+
+export interface BatchPortion {
+  balance: Generated<string>
+  balanceDoubt: string | null
+  balanceId: string | null
+  batchWeighingId: string
+  grossTyped: string
+  id: string
+  isFromPaper: Generated<boolean>
+  isLast: boolean
+  lot: Generated<string>
+  netG: Numeric
+  note: Generated<string>
+  reason: Generated<string>
+  recordedAt: Generated<string>
+  supersedes: string | null
+  tareTyped: Generated<string>
+  weighedAt: Generated<string>
+  weighedBy: string
+}
+
+export interface BatchReading {
+  attribute: string
+  batchId: string
+  detail: Generated<unknown>
+  id: string
+  instrumentDoubt: string | null
+  instrumentId: string | null
+  isFromPaper: Generated<boolean>
+  moment: string
+  note: Generated<string>
+  readAt: Generated<string>
+  readBy: string
+  reason: Generated<string>
+  recordedAt: Generated<string>
+  replicate: number
+  supersedes: string | null
+  typed: string
+  value: Numeric | null
 }
 
 export interface BatchStep {
@@ -49,6 +106,21 @@ export interface BatchStep {
   note: Generated<string>
   position: number
   version: Generated<number>
+}
+
+export interface BatchStepEntry {
+  actualMinutes: Numeric | null
+  actualSpeedRpm: number | null
+  actualTemperatureC: Numeric | null
+  batchStepId: string
+  happenedAt: Generated<string>
+  id: string
+  isFromPaper: Generated<boolean>
+  kind: string
+  note: Generated<string>
+  reason: Generated<string>
+  recordedAt: Generated<string>
+  recordedBy: string
 }
 
 export interface BatchWeighing {
@@ -144,9 +216,23 @@ export interface Formula {
   createdAt: Generated<string>
   createdBy: string
   emulsionType: string
+  familyOfVersionId: string | null
   id: string
+  levels: Generated<unknown>
   name: string
   version: Generated<number>
+}
+
+export interface FormulaAnswer {
+  answeredAt: Generated<string>
+  answeredBy: string
+  askedAbout: string
+  formulaVersionId: string
+  id: string
+  kind: string
+  note: string
+  question: string
+  value: Numeric | null
 }
 
 export interface FormulaLine {
@@ -198,15 +284,28 @@ export interface IdempotencyAnswer {
 }
 
 export interface Ingredient {
+  acidValue: Numeric | null
+  baseValue: Numeric | null
   caution: Generated<string>
   createdAt: Generated<string>
   density: Numeric
   densitySource: Generated<string>
+  figuresSource: Generated<string>
   function: Generated<string>
+  holdsInternalPercent: Numeric | null
   id: string
   inciName: string
   isOilPhase: Generated<boolean>
+  meltsAboveC: Numeric | null
+  note: Generated<string>
+  percentHighThousandths: number | null
+  percentLowThousandths: number | null
+  phHigh: Numeric | null
+  phLow: Numeric | null
   priceCentsPerKg: number | null
+  rangeSource: Generated<string>
+  supplierName: Generated<string>
+  synonyms: Generated<string[]>
   version: Generated<number>
 }
 
@@ -557,7 +656,11 @@ export interface TrailSeal {
 
 export interface DB {
   batch: Batch
+  batchJar: BatchJar
+  batchPortion: BatchPortion
+  batchReading: BatchReading
   batchStep: BatchStep
+  batchStepEntry: BatchStepEntry
   batchWeighing: BatchWeighing
   calibration: Calibration
   client: Client
@@ -565,6 +668,7 @@ export interface DB {
   flag: Flag
   flagComment: FlagComment
   formula: Formula
+  formulaAnswer: FormulaAnswer
   formulaLine: FormulaLine
   formulaStep: FormulaStep
   formulaVersion: FormulaVersion

@@ -38,6 +38,7 @@ const visits: Visit[] = [
   { page: 'formulas', who: 'liv', at: '/formulas' },
   { page: 'formulas/new', who: 'liv', at: '/formulas/new' },
   { page: 'formulas/[code]', who: 'liv', at: '/formulas/N86' },
+  { page: 'ingredients', who: 'liv', at: '/ingredients', phone: true },
   { page: 'batches', who: 'liv', at: '/batches' },
   { page: 'batches/[code]', who: 'liv', at: '/batches/N86-1' },
   { page: 'protocols', who: 'liv', at: '/protocols' },

@@ -19,7 +19,7 @@ import {
 import { newId } from '@/lib/db/id'
 import { createFormula } from '@/lib/formula/commands/create-formula'
 import { createFormulaInput } from '@/lib/formula/schema'
-import { addIngredient } from '@/lib/ingredient/commands'
+import { addIngredients } from '@/lib/ingredient/commands'
 import { ingredientInput } from '@/lib/ingredient/schema'
 import { daysAgo, type Filling } from './context'
 
@@ -29,24 +29,18 @@ export async function fillFormulas(filling: Filling, clients: Record<DemoClient,
   const { liv } = filling.people
   const ids = new Map<string, string>()
   const begun = daysAgo(filling, 798, 10)
-  await filling.act(liv, begun, async (trx) => {
-    for (const [inciName, fn, density, isOilPhase, price] of demoIngredients) {
-      const id = newId()
-      ids.set(inciName, id)
-      await addIngredient(
-        trx,
-        liv,
-        ingredientInput.parse({
-          id,
-          inciName,
-          function: fn,
-          density,
-          isOilPhase,
-          priceCentsPerKg: Math.round(price * 100),
-        }),
-      )
-    }
+  const book = demoIngredients.map(({ entry, isOilPhase }) => {
+    const [inciName, fn, density, price, low, high, more] = entry
+    const id = newId()
+    ids.set(inciName, id)
+    const { ph, ...known } = more ?? {}
+    return ingredientInput.parse({
+      ...{ id, inciName, function: fn, density, isOilPhase, priceCentsPerKg: Math.round(price * 100) },
+      ...{ percentLowThousandths: thousandths(low), percentHighThousandths: thousandths(high) },
+      ...{ phLow: ph?.[0], phHigh: ph?.[1], ...known },
+    })
   })
+  await filling.act(liv, begun, (trx) => addIngredients(trx, liv, book))
   const made: Formulas = {}
   for (const formula of demoFormulas) {
     const [id, versionId] = [newId(), newId()]
@@ -83,7 +77,7 @@ export async function fillFormulas(filling: Filling, clients: Record<DemoClient,
 function linesOf(formula: DemoFormula, ids: Map<string, string>) {
   const given = formula.lines.reduce((sum, [, , percent]) => sum + Math.round(percent * 1000), 0)
   return formula.lines.map(([phase, inciName, percent, isRemainder]) => {
-    const known = demoIngredients.find(([name]) => name === inciName)
+    const known = demoIngredients.find(({ entry }) => entry[0] === inciName)?.entry
     if (!known) throw new Error(`The demo's formula ${formula.code} names ${inciName}, which its book lacks.`)
     return {
       id: newId(),
@@ -95,10 +89,12 @@ function linesOf(formula: DemoFormula, ids: Map<string, string>) {
       density: known[2],
       isInternal: formula.internal.includes(phase),
       isRemainder: isRemainder ?? false,
-      priceCentsPerKg: Math.round(known[4] * 100),
+      priceCentsPerKg: Math.round(known[3] * 100),
     }
   })
 }
+
+const thousandths = (percent: number | null) => (percent === null ? null : Math.round(percent * 1000))
 
 export type Batch = { id: string; code: string; formula: string }
 
