@@ -1,3 +1,5 @@
+'use client'
+
 import { EmulsionSection } from '@/components/charts/emulsion-section'
 import { PhiRuler } from '@/components/charts/phi-ruler'
 import type { FormulaPage } from '@/lib/formula/queries/get-formula'

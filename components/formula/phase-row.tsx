@@ -1,3 +1,5 @@
+'use client'
+
 import { innerWord } from '@/lib/formula/rules/finding'
 import { percentText } from '@/lib/formula/rules/numbers'
 import type { PhaseTotal } from '@/lib/formula/rules/totals'

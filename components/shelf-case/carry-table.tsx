@@ -1,3 +1,5 @@
+'use client'
+
 import { FigureDetails } from '@/components/ui/figure-details'
 import { Ledger } from '@/components/ui/ledger'
 import type { AttributeEvidence } from '@/lib/shelf-case/rules/content'

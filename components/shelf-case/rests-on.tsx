@@ -1,3 +1,5 @@
+'use client'
+
 import type { ReactNode } from 'react'
 import { FigureDetails } from '@/components/ui/figure-details'
 import { Section } from '@/components/ui/section'

@@ -121,6 +121,7 @@ it('A05: a study of somebody else is not there for a client, at any address of i
     const options = {
       method: found.method,
       params: { code },
+      query: { batchId, studyStationId: newId(), attribute: 'ph' },
       body: { isFollowing: true },
       cookie: client.cookie,
     }

@@ -52,6 +52,7 @@ const visits: Visit[] = [
   { page: 'cases/[code]', who: 'rune', at: '/cases/C-002', phone: true },
   { page: 'reports', who: 'pell', at: '/reports', phone: true },
   { page: 'flags', who: 'liv', at: '/flags', phone: true },
+  { page: 'flags/trust', who: 'liv', at: '/flags/trust', phone: true },
   { page: 'flags/[number]', who: 'liv', at: { from: '/studies/S-004', link: /^Answer flag \d+$/ } },
   { page: 'trail', who: 'rune', at: '/trail' },
   { page: 'people', who: 'hedda', at: '/people' },

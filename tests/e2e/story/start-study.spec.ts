@@ -70,7 +70,7 @@ async function writeFormula(page: Page) {
     if (index === 3) await expect(finding).toHaveText(/% water inside, past the closest packing$/)
   }
   await expect(finding).toHaveText(`${insideVolume} water inside, past the closest packing`)
-  await expect(page.getByText('By mass it is 88.0 %.')).toBeVisible()
+  await expect(page.getByText(/^Inside:/)).toHaveText(/, 88\.0 % by mass;/)
   await save(page)
   await page.getByRole('link', { name: /^Process/ }).click()
   for (const [number, phase, instruction] of [
