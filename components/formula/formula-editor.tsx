@@ -1,7 +1,7 @@
 'use client'
 
 import Link from 'next/link'
-import { useMemo } from 'react'
+import { useEffect, useEffectEvent, useMemo } from 'react'
 import { Heading } from '@/components/ui/heading'
 import type { FormulaPage } from '@/lib/formula/queries/get-formula'
 import { formulaChecks } from '@/lib/formula/rules/checks'
@@ -53,15 +53,31 @@ export function FormulaEditor({ formula, part, personId, mayWrite, isClient, onR
     }
   }
 
+  const onKey = useEffectEvent((event: KeyboardEvent) => {
+    if (!isOpen || !(event.ctrlKey || event.metaKey) || event.altKey) return
+    // A dialog over the page has its own fields.
+    if (event.target instanceof Element && event.target.closest('[role="dialog"]')) return
+    const key = event.key.toLowerCase()
+    const act =
+      key === 's'
+        ? () => void save()
+        : key === 'y' || (key === 'z' && event.shiftKey)
+          ? handle.undo.doAgain
+          : key === 'z'
+            ? handle.undo.takeBack
+            : null
+    if (!act) return
+    event.preventDefault()
+    act()
+  })
+  useEffect(() => {
+    const listen = (event: KeyboardEvent) => onKey(event)
+    document.addEventListener('keydown', listen)
+    return () => document.removeEventListener('keydown', listen)
+  }, [])
+
   return (
-    <div
-      onKeyDown={(event) => {
-        if (isOpen && event.key === 's' && (event.ctrlKey || event.metaKey)) {
-          event.preventDefault()
-          void save()
-        }
-      }}
-    >
+    <div>
       <Heading
         crumb={<Crumb formula={formula} name={draft.name} emulsionType={draft.emulsionType} />}
         headline={

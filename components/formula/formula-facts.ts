@@ -1,6 +1,6 @@
 import { percentText } from '@/lib/formula/rules/numbers'
 import type { Amounts, FormulaTotals, PhaseTotal } from '@/lib/formula/rules/totals'
-import { costMethod, totalMethod } from '@/lib/science/methods/making'
+import { costMethod, jarCostMethod, oilWaterMethod, totalMethod } from '@/lib/science/methods/making'
 import { exactly, factsOf, type FigureFacts } from '@/lib/science/methods/method'
 import { phaseFractionMethod } from '@/lib/science/methods/emulsion'
 import { highInternalPhaseAbove } from '@/lib/science/phase-fraction'
@@ -87,6 +87,29 @@ export function costFacts(lines: Lines, totals: FormulaTotals, result: string): 
         value: `${exactly((line.priceCentsPerKg ?? 0) / 100)} per kg`,
       })),
   })
+}
+
+export function jarCostFacts(totals: FormulaTotals, grams: number, result: string): FigureFacts {
+  return factsOf(jarCostMethod, {
+    result,
+    values: {
+      perKg: (totals.costCentsPerKg ?? 0) / 100,
+      grams,
+      unpriced: totals.linesWithoutPrice || null,
+    },
+  })
+}
+
+export function oilWaterFacts(parts: { oilThousandths: number; waterThousandths: number }): FigureFacts {
+  return factsOf(oilWaterMethod, {
+    result: oilWaterText(parts),
+    values: { oil: parts.oilThousandths / 1000, water: parts.waterThousandths / 1000 },
+  })
+}
+
+/** "12.40 to 87.60". */
+export function oilWaterText(parts: { oilThousandths: number; waterThousandths: number }): string {
+  return `${percentText(parts.oilThousandths)} to ${percentText(parts.waterThousandths)}`
 }
 
 function lineRows(lines: readonly (Amounts & { inciName?: string })[]) {

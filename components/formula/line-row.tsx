@@ -1,32 +1,56 @@
 'use client'
 
+import { memo } from 'react'
 import type { IngredientRow } from '@/lib/ingredient/queries'
 import { percentText } from '@/lib/formula/rules/numbers'
 import type { LineErrors, TypedLine } from '@/lib/formula/rules/typed'
 import { Cell } from './cell'
 import { InciCell } from './inci-cell'
 import { RowActs } from './row-acts'
+import type { Drop, StartDrag } from './use-row-drag'
+
+/** What a row asks of its sheet; the same functions at every keystroke, so that only the row typed in is drawn anew. */
+export type LineActs = {
+  change: (id: string, next: Partial<TypedLine>, column: string) => void
+  pick: (id: string, ingredient: IngredientRow) => void
+  add: (line: TypedLine) => void
+  move: (id: string, by: -1 | 1) => void
+  remove: (id: string) => void
+  grip: StartDrag
+}
 
 type Props = {
   line: TypedLine
-  errors: LineErrors
-  /** What the "q.s. to 100" line comes to. */
-  remainder: number
+  errors: LineErrors | undefined
+  /** What the "q.s. to 100" line comes to; null for every other. */
+  remainder: number | null
   /** The share in the version before, where it was another; "none" for a line that is new. */
   was: string | null
-  onChange: (change: Partial<TypedLine>) => void
-  onPick: (ingredient: IngredientRow) => void
-  onAdd: () => void
-  onUp?: () => void
-  onDown?: () => void
-  onRemove: () => void
+  isFirst: boolean
+  isLast: boolean
+  drop: Drop['side'] | undefined
+  acts: LineActs
 }
 
-export function LineRow({ line, errors, remainder, was, onChange, onPick, onAdd, ...acts }: Props) {
+export const LineRow = memo(function LineRow({
+  line,
+  errors = {},
+  remainder,
+  was,
+  isFirst,
+  isLast,
+  drop,
+  acts,
+}: Props) {
+  const onChange = (next: Partial<TypedLine>, column: string) => acts.change(line.id, next, column)
   const name = line.inciName.trim() || 'this line'
   const cell = (col: string) => ({ id: `${line.id}-${col}`, 'data-row': line.id, 'data-col': col })
   return (
-    <tr className="group border-b border-hair align-top focus-within:bg-paper" data-line={line.id}>
+    <tr
+      data-line={line.id}
+      data-drop={drop}
+      className="group border-b border-hair align-top focus-within:bg-paper data-[drop=after]:shadow-[inset_0_-3px_0_var(--ink)] data-[drop=before]:shadow-[inset_0_3px_0_var(--ink)]"
+    >
       <td className="py-0.5">
         <InciCell
           row={line.id}
@@ -34,9 +58,9 @@ export function LineRow({ line, errors, remainder, was, onChange, onPick, onAdd,
           value={line.inciName}
           isKnown={line.ingredientId !== null}
           error={errors.inciName}
-          onText={(inciName) => onChange({ inciName, ingredientId: null })}
-          onPick={onPick}
-          onAdd={onAdd}
+          onText={(inciName) => onChange({ inciName, ingredientId: null }, 'inci')}
+          onPick={(ingredient) => acts.pick(line.id, ingredient)}
+          onAdd={() => acts.add(line)}
         />
       </td>
       <td className="py-0.5">
@@ -46,7 +70,7 @@ export function LineRow({ line, errors, remainder, was, onChange, onPick, onAdd,
           value={line.function}
           error={errors.function}
           list="formula-functions"
-          onText={(text) => onChange({ function: text })}
+          onText={(text) => onChange({ function: text }, 'function')}
           title={line.function.length > 13 ? line.function : undefined}
           className="text-13 text-soft focus:text-ink"
         />
@@ -68,9 +92,9 @@ export function LineRow({ line, errors, remainder, was, onChange, onPick, onAdd,
           {...cell('percent')}
           label={`% w/w of ${name}`}
           inputMode="decimal"
-          value={line.isRemainder ? percentText(remainder) : line.percent}
+          value={remainder === null ? line.percent : percentText(remainder)}
           error={errors.percent}
-          onText={(text) => onChange(typedShare(text))}
+          onText={(text) => onChange(typedShare(text), 'percent')}
           className="text-right text-16 font-650"
         />
       </td>
@@ -81,7 +105,7 @@ export function LineRow({ line, errors, remainder, was, onChange, onPick, onAdd,
           inputMode="decimal"
           value={line.density}
           error={errors.density}
-          onText={(density) => onChange({ density })}
+          onText={(density) => onChange({ density }, 'density')}
           className="text-right text-14"
         />
       </td>
@@ -92,7 +116,7 @@ export function LineRow({ line, errors, remainder, was, onChange, onPick, onAdd,
           inputMode="decimal"
           value={line.price}
           error={errors.price}
-          onText={(price) => onChange({ price })}
+          onText={(price) => onChange({ price }, 'price')}
           className="text-right text-14"
         />
       </td>
@@ -102,16 +126,22 @@ export function LineRow({ line, errors, remainder, was, onChange, onPick, onAdd,
           {...cell('inside')}
           aria-label={`${name} is in the internal phase`}
           checked={line.isInternal}
-          onChange={(event) => onChange({ isInternal: event.target.checked })}
+          onChange={(event) => onChange({ isInternal: event.target.checked }, 'inside')}
           className="tick align-middle"
         />
       </td>
       <td className="py-0.5 align-middle">
-        <RowActs of={name} {...acts} />
+        <RowActs
+          of={name}
+          onUp={isFirst ? undefined : () => acts.move(line.id, -1)}
+          onDown={isLast ? undefined : () => acts.move(line.id, 1)}
+          onRemove={() => acts.remove(line.id)}
+          onGrip={(event) => acts.grip(event, line.id)}
+        />
       </td>
     </tr>
   )
-}
+})
 
 /** "q.s." or "qs" typed as the share makes the line the one that fills up to 100. */
 function typedShare(text: string): Partial<TypedLine> {

@@ -1,21 +1,23 @@
 'use client'
 
-import { useRef, type ClipboardEvent, type KeyboardEvent } from 'react'
-import { newId } from '@/lib/db/id'
-import { fetcher } from '@/lib/http/fetcher'
-import { emptyLine, grouped, moveLine, nextPhase, phasesOf } from '@/lib/formula/rules/arrange'
-import { readPastedLines } from '@/lib/formula/rules/paste'
-import { isBlankLine, remainderOf, type TypedLine } from '@/lib/formula/rules/typed'
+import { useCallback, useRef, type KeyboardEvent } from 'react'
+import { grouped, nextPhase, phasesOf, placeLine } from '@/lib/formula/rules/arrange'
+import { remainderOf, type TypedLine } from '@/lib/formula/rules/typed'
 import type { PhaseTotal } from '@/lib/formula/rules/totals'
 import type { EmulsionType } from '@/lib/formula/schema'
 import type { FigureFacts } from '@/lib/science/methods/method'
-import type { IngredientRow } from '@/lib/ingredient/queries'
 import { Button } from '@/components/ui/button'
-import { addToIngredients, filledFrom, linesFromPaste } from './fill-line'
 import { LineRow } from './line-row'
 import { PhaseRow } from './phase-row'
+import type { Problems } from './read-draft'
 import { focusCell, walkSheet } from './sheet-keys'
-import type { Problems } from './use-draft'
+import { UndoButtons } from './undo-buttons'
+import type { DraftHandle } from './use-draft'
+import { useLineActs } from './use-line-acts'
+import { usePaste } from './use-paste'
+import { useRowDrag } from './use-row-drag'
+
+export type ChangeLines = (next: (lines: TypedLine[]) => TypedLine[], at?: string) => void
 
 type Props = {
   lines: TypedLine[]
@@ -25,8 +27,9 @@ type Props = {
   problems: Problems
   /** Share in the version before by INCI name; null without one. */
   before: Map<string, string> | null
-  onLines: (lines: TypedLine[]) => void
+  onLines: ChangeLines
   onProblem: (sentence: string) => void
+  undo: DraftHandle['undo']
   foot: React.ReactNode
 }
 
@@ -40,76 +43,32 @@ export function LineSheet({
   before,
   onLines,
   onProblem,
+  undo,
   foot,
 }: Props) {
   const sheet = useRef<HTMLTableElement>(null)
   const remainder = remainderOf(lines)
-  const change = (id: string, next: Partial<TypedLine>) =>
-    onLines(
-      lines.map((line) => {
-        if (line.id === id) return { ...line, ...next }
-        // Only one line fills up to 100.
-        return next.isRemainder && line.isRemainder ? { ...line, isRemainder: false } : line
-      }),
-    )
-
-  function addLine(phase: string, after?: string) {
-    const own = lines.filter((line) => line.phase === phase)
-    const isInternal = (own[0] ?? lines.at(-1))?.isInternal ?? false
-    const line = emptyLine(newId(), phase, isInternal)
-    const index = lines.findIndex((other) => other.id === (after ?? own.at(-1)?.id))
-    onLines(
-      grouped([
-        ...lines.slice(0, index + 1 || lines.length),
-        line,
-        ...lines.slice(index + 1 || lines.length),
-      ]),
-    )
-    focusCell(sheet.current, line.id, 'inci')
-  }
-
-  function removeLine(id: string) {
-    const index = lines.findIndex((line) => line.id === id)
-    const next = lines[index + 1] ?? lines[index - 1]
-    onLines(lines.filter((line) => line.id !== id))
-    if (next) focusCell(sheet.current, next.id, 'inci')
-  }
+  const onDrop = useCallback(
+    (id: string, besideId: string, side: 'before' | 'after') =>
+      onLines((now) => grouped(placeLine(now, id, besideId, side))),
+    [onLines],
+  )
+  const { drop, start } = useRowDrag(sheet, onDrop)
+  const { acts, addLine } = useLineActs({ sheet, emulsionType, onLines, onProblem, start })
+  const paste = usePaste({ sheet, lines, onLines, onProblem })
 
   function press(event: KeyboardEvent<HTMLTableElement>) {
-    const row = event.target instanceof HTMLInputElement ? event.target.dataset.row : undefined
-    const line = lines.find((one) => one.id === row)
+    const field = event.target instanceof HTMLInputElement ? event.target : null
+    const line = lines.find((one) => one.id === field?.dataset['row'])
     if (!line) return
     if (event.altKey && (event.key === 'ArrowUp' || event.key === 'ArrowDown')) {
       event.preventDefault()
-      onLines(grouped(moveLine(lines, line.id, event.key === 'ArrowUp' ? -1 : 1)))
-      focusCell(sheet.current, line.id, (event.target as HTMLElement).dataset.col ?? 'inci')
+      acts.move(line.id, event.key === 'ArrowUp' ? -1 : 1)
+      focusCell(sheet.current, line.id, field?.dataset['col'] ?? 'inci')
     } else if (event.altKey && (event.key === 'Delete' || event.key === 'Backspace')) {
       event.preventDefault()
-      removeLine(line.id)
+      acts.remove(line.id)
     } else if (walkSheet(event) === 'past the end') addLine(line.phase, line.id)
-  }
-
-  async function paste(event: ClipboardEvent<HTMLTableElement>) {
-    const pasted = readPastedLines(event.clipboardData.getData('text/plain'))
-    if (!pasted) return
-    event.preventDefault()
-    const row = event.target instanceof HTMLInputElement ? event.target.dataset.row : undefined
-    const at = lines.find((line) => line.id === row)
-    const query = new URLSearchParams(pasted.map((line) => ['name', line.inciName]))
-    const known = await fetcher<IngredientRow[]>(`/api/ingredients/known?${query}`).catch(() => [])
-    const added = linesFromPaste(pasted, known, at, lines)
-    const index = at ? lines.indexOf(at) + 1 : lines.length
-    const kept = [...lines.slice(0, index), ...added, ...lines.slice(index)].filter(
-      (line) => !isBlankLine(line) || line.isRemainder,
-    )
-    onLines(grouped(kept))
-    if (added[0]) focusCell(sheet.current, added[0].id, 'percent')
-  }
-
-  async function add(line: TypedLine) {
-    const answer = await addToIngredients(line, emulsionType)
-    if (typeof answer === 'string') onProblem(answer)
-    else change(line.id, { ingredientId: answer.id })
   }
 
   return (
@@ -173,22 +132,13 @@ export function LineSheet({
                   <LineRow
                     key={line.id}
                     line={line}
-                    errors={problems.lines[line.id] ?? {}}
-                    remainder={remainder}
+                    errors={problems.lines[line.id]}
+                    remainder={line.isRemainder ? remainder : null}
                     was={wasShare(line, remainder, before)}
-                    onChange={(next) => change(line.id, next)}
-                    onPick={(ingredient) => {
-                      change(line.id, filledFrom(line, ingredient))
-                      focusCell(sheet.current, line.id, 'percent')
-                    }}
-                    onAdd={() => void add(line)}
-                    onUp={
-                      lines[0] === line ? undefined : () => onLines(grouped(moveLine(lines, line.id, -1)))
-                    }
-                    onDown={
-                      lines.at(-1) === line ? undefined : () => onLines(grouped(moveLine(lines, line.id, 1)))
-                    }
-                    onRemove={() => removeLine(line.id)}
+                    isFirst={lines[0] === line}
+                    isLast={lines.at(-1) === line}
+                    drop={drop?.besideId === line.id ? drop.side : undefined}
+                    acts={acts}
                   />
                 ))}
             </tbody>
@@ -198,9 +148,10 @@ export function LineSheet({
       </div>
       <div className="mt-2 flex flex-wrap items-center gap-x-4 gap-y-2">
         <Button onClick={() => addLine(nextPhase(lines))}>Add phase {nextPhase(lines)}</Button>
+        <UndoButtons undo={undo} />
         <p className="text-13 text-soft">
           Paste a block from a spreadsheet into any field. Type qs as a share to fill up to 100. Alt with up
-          or down moves a line, Alt with Delete removes it.
+          or down moves a line, Alt with Delete removes it, Ctrl Z takes back.
         </p>
       </div>
       <datalist id="formula-functions">
@@ -213,7 +164,7 @@ export function LineSheet({
 }
 
 /** After the INCI name: function, was, % w/w, g/mL, per kg, in, acts. */
-const columnWidths = [110, 58, 64, 54, 56, 30, 74]
+const columnWidths = [108, 58, 64, 54, 56, 26, 92]
 
 function wasShare(line: TypedLine, remainder: number, before: Map<string, string> | null): string | null {
   if (!before || !line.inciName.trim()) return null

@@ -1,6 +1,6 @@
 'use client'
 
-import { useRef, useState } from 'react'
+import { useCallback, useRef, useState } from 'react'
 import { ErrorNote } from '@/components/ui/error-note'
 import { Field } from '@/components/ui/field'
 import { Select } from '@/components/ui/select'
@@ -8,13 +8,16 @@ import type { FormulaPage } from '@/lib/formula/queries/get-formula'
 import type { FormulaCheck } from '@/lib/formula/rules/checks'
 import { emptyLine } from '@/lib/formula/rules/arrange'
 import type { FormulaTotals, PhaseTotal } from '@/lib/formula/rules/totals'
+import type { TypedLine } from '@/lib/formula/rules/typed'
 import { emulsionTypes, type EmulsionType } from '@/lib/formula/schema'
 import { InsideDrawing } from './inside-drawing'
-import { LineSheet } from './line-sheet'
+import { FamilyPart } from './family-part'
+import { LineSheet, type ChangeLines } from './line-sheet'
 import { ReadSheet } from './read-sheet'
 import { ApartJar } from './apart-jar'
 import { phaseFacts } from './formula-facts'
 import { TotalRow } from './total-row'
+import { TwiceNote } from './twice-note'
 import { useRowMiddles } from './use-row-middles'
 import type { DraftHandle } from './use-draft'
 
@@ -34,9 +37,21 @@ export function LinesPart({ formula, handle, isOpen, totals, phases, checks, bef
   const [problem, setProblem] = useState('')
   const sheet = useRef<HTMLDivElement>(null)
   const beforeNumber = before ? (formula.before?.number ?? null) : null
-  const foot = <TotalRow totals={totals} amounts={amounts} beforeNumber={beforeNumber} />
+  const foot = (
+    <TotalRow
+      totals={totals}
+      amounts={amounts}
+      emulsionType={draft.emulsionType}
+      beforeNumber={beforeNumber}
+    />
+  )
   const factsOfPhase = (total: PhaseTotal) => phaseFacts(amounts, total)
-  const lines = draft.lines.length ? draft.lines : [emptyLine(formula.versionId, 'A', false)]
+  const { versionId } = formula
+  const lines = orFirst(draft.lines, versionId)
+  const onLines: ChangeLines = useCallback(
+    (next, at) => change((now) => ({ lines: next(orFirst(now.lines, versionId)) }), at),
+    [change, versionId],
+  )
   const middles = useRowMiddles(sheet, lines.map((line) => line.id).join())
   return (
     <div className="grid grid-cols-[minmax(0,1fr)] gap-x-8 gap-y-8 xl:grid-cols-[minmax(0,1fr)_572px]">
@@ -52,13 +67,15 @@ export function LinesPart({ formula, handle, isOpen, totals, phases, checks, bef
                 factsOfPhase={factsOfPhase}
                 problems={problems}
                 before={before}
-                onLines={(next) => change({ lines: next })}
+                onLines={onLines}
                 onProblem={setProblem}
+                undo={handle.undo}
                 foot={foot}
               />
               <div className="mt-3">
                 <ErrorNote error={problem || null} />
               </div>
+              <TwiceNote lines={lines} onLines={onLines} />
               <Facts handle={handle} />
             </>
           ) : (
@@ -70,6 +87,9 @@ export function LinesPart({ formula, handle, isOpen, totals, phases, checks, bef
               foot={foot}
             />
           )}
+          {formula.families.map((family) => (
+            <FamilyPart key={family.members[0]?.code} family={family} code={formula.code} />
+          ))}
         </div>
       </div>
       <InsideDrawing
@@ -83,23 +103,33 @@ export function LinesPart({ formula, handle, isOpen, totals, phases, checks, bef
   )
 }
 
+/** A sheet has a first line to type in. */
+function orFirst(lines: TypedLine[], versionId: string): TypedLine[] {
+  return lines.length ? lines : [emptyLine(versionId, 'A', false)]
+}
+
 function Facts({ handle }: { handle: DraftHandle }) {
   const { draft, change, problems } = handle
   return (
     <div className="mt-6 grid gap-4 sm:grid-cols-[1fr_200px]">
-      <Field label="Name" value={draft.name} error={problems.name} onText={(name) => change({ name })} />
+      <Field
+        label="Name"
+        value={draft.name}
+        error={problems.name}
+        onText={(name) => change(() => ({ name }), 'name')}
+      />
       <Select
         label="Emulsion type"
         value={draft.emulsionType}
         error={problems.emulsionType}
         options={emulsionTypes.map((type) => ({ value: type, label: type }))}
-        onPick={(type) => change({ emulsionType: type as EmulsionType })}
+        onPick={(type) => change(() => ({ emulsionType: type as EmulsionType }))}
       />
       <Field
         label="Why this version"
         value={draft.note}
         wrap="sm:col-span-2"
-        onText={(note) => change({ note })}
+        onText={(note) => change(() => ({ note }), 'note')}
       />
     </div>
   )

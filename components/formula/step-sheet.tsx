@@ -1,16 +1,26 @@
 'use client'
 
-import { useRef, type KeyboardEvent } from 'react'
+import { useCallback, useRef, type KeyboardEvent } from 'react'
 import { newId } from '@/lib/db/id'
-import { moveRow } from '@/lib/formula/rules/arrange'
+import { moveRow, placeRow } from '@/lib/formula/rules/arrange'
 import type { TypedStep } from '@/lib/formula/rules/typed'
 import { Button } from '@/components/ui/button'
 import { Cell } from './cell'
 import { RowActs } from './row-acts'
 import { focusCell, walkSheet } from './sheet-keys'
-import type { Problems } from './use-draft'
+import type { Problems } from './read-draft'
+import { UndoButtons } from './undo-buttons'
+import type { DraftHandle } from './use-draft'
+import { useRowDrag } from './use-row-drag'
 
-type Props = { steps: TypedStep[]; problems: Problems; onSteps: (steps: TypedStep[]) => void }
+export type ChangeSteps = (next: (steps: TypedStep[]) => TypedStep[], at?: string) => void
+
+type Props = {
+  steps: TypedStep[]
+  problems: Problems
+  onSteps: ChangeSteps
+  undo: DraftHandle['undo']
+}
 
 const columns = [
   { key: 'phase', title: 'phase', width: 92, align: '' },
@@ -22,8 +32,14 @@ const columns = [
 ] as const
 
 /** The process in order. "B into A" as the phase names the step that joins them. */
-export function StepSheet({ steps, problems, onSteps }: Props) {
+export function StepSheet({ steps, problems, onSteps, undo }: Props) {
   const sheet = useRef<HTMLTableElement>(null)
+  const onDrop = useCallback(
+    (id: string, besideId: string, side: 'before' | 'after') =>
+      onSteps((now) => placeRow(now, id, besideId, side)),
+    [onSteps],
+  )
+  const { drop, start } = useRowDrag(sheet, onDrop)
 
   function addStep(after?: string) {
     const step = {
@@ -35,15 +51,17 @@ export function StepSheet({ steps, problems, onSteps }: Props) {
       temperature: '',
       caution: '',
     }
-    const index = after ? steps.findIndex((one) => one.id === after) + 1 : steps.length
-    onSteps([...steps.slice(0, index), step, ...steps.slice(index)])
+    onSteps((now) => {
+      const index = after ? now.findIndex((one) => one.id === after) + 1 : now.length
+      return [...now.slice(0, index), step, ...now.slice(index)]
+    })
     focusCell(sheet.current, step.id, 'phase')
   }
 
   function remove(id: string) {
     const index = steps.findIndex((step) => step.id === id)
     const next = steps[index + 1] ?? steps[index - 1]
-    onSteps(steps.filter((step) => step.id !== id))
+    onSteps((now) => now.filter((step) => step.id !== id))
     if (next) focusCell(sheet.current, next.id, 'instruction')
   }
 
@@ -53,7 +71,7 @@ export function StepSheet({ steps, problems, onSteps }: Props) {
     if (!step) return
     if (event.altKey && (event.key === 'ArrowUp' || event.key === 'ArrowDown')) {
       event.preventDefault()
-      onSteps(moveRow(steps, step.id, event.key === 'ArrowUp' ? -1 : 1))
+      onSteps((now) => moveRow(now, step.id, event.key === 'ArrowUp' ? -1 : 1))
       focusCell(sheet.current, step.id, field?.dataset.col ?? 'phase')
     } else if (event.altKey && (event.key === 'Delete' || event.key === 'Backspace')) {
       event.preventDefault()
@@ -85,14 +103,19 @@ export function StepSheet({ steps, problems, onSteps }: Props) {
                   {column.title}
                 </th>
               ))}
-              <th scope="col" className="w-[84px]">
+              <th scope="col" className="w-[98px]">
                 <span className="sr-only">acts</span>
               </th>
             </tr>
           </thead>
           <tbody>
             {steps.map((step, index) => (
-              <tr key={step.id} className="group border-b border-hair align-top focus-within:bg-paper">
+              <tr
+                key={step.id}
+                data-line={step.id}
+                data-drop={drop?.besideId === step.id ? drop.side : undefined}
+                className="group border-b border-hair align-top focus-within:bg-paper data-[drop=after]:shadow-[inset_0_-3px_0_var(--ink)] data-[drop=before]:shadow-[inset_0_3px_0_var(--ink)]"
+              >
                 <th scope="row" className="px-1.5 pt-1.5 text-left text-16 font-750">
                   {index + 1}
                 </th>
@@ -108,7 +131,9 @@ export function StepSheet({ steps, problems, onSteps }: Props) {
                       inputMode={column.align ? 'decimal' : undefined}
                       onText={(text) =>
                         onSteps(
-                          steps.map((one) => (one.id === step.id ? { ...one, [column.key]: text } : one)),
+                          (now) =>
+                            now.map((one) => (one.id === step.id ? { ...one, [column.key]: text } : one)),
+                          `${step.id} ${column.key}`,
                         )
                       }
                       className={column.align}
@@ -118,9 +143,12 @@ export function StepSheet({ steps, problems, onSteps }: Props) {
                 <td className="pt-0.5">
                   <RowActs
                     of={`step ${index + 1}`}
-                    onUp={index > 0 ? () => onSteps(moveRow(steps, step.id, -1)) : undefined}
-                    onDown={index < steps.length - 1 ? () => onSteps(moveRow(steps, step.id, 1)) : undefined}
+                    onUp={index > 0 ? () => onSteps((now) => moveRow(now, step.id, -1)) : undefined}
+                    onDown={
+                      index < steps.length - 1 ? () => onSteps((now) => moveRow(now, step.id, 1)) : undefined
+                    }
                     onRemove={() => remove(step.id)}
+                    onGrip={(event) => start(event, step.id)}
                   />
                 </td>
               </tr>
@@ -130,7 +158,10 @@ export function StepSheet({ steps, problems, onSteps }: Props) {
       </div>
       <div className="mt-2 flex flex-wrap items-center gap-x-4 gap-y-2">
         <Button onClick={() => addStep()}>Add step</Button>
-        <p className="text-13 text-soft">Say B into A as the phase of the step that joins the two.</p>
+        <UndoButtons undo={undo} />
+        <p className="text-13 text-soft">
+          Say B into A as the phase of the step that joins the two. Alt with up or down moves a step.
+        </p>
       </div>
     </div>
   )

@@ -1,12 +1,22 @@
-import { moneyText, percentText } from '@/lib/formula/rules/numbers'
-import type { Amounts, FormulaTotals } from '@/lib/formula/rules/totals'
+'use client'
+
+import { useState } from 'react'
+import { grouped, moneyText, percentText, readDecimal } from '@/lib/formula/rules/numbers'
+import { jarCents, oilAndWater, type Amounts, type FormulaTotals } from '@/lib/formula/rules/totals'
+import type { EmulsionType } from '@/lib/formula/schema'
 import { FigureDetails } from '@/components/ui/figure-details'
-import { costFacts, totalFacts } from './formula-facts'
+import { costFacts, jarCostFacts, oilWaterFacts, oilWaterText, totalFacts } from './formula-facts'
 
-type Props = { totals: FormulaTotals; amounts: readonly Amounts[]; beforeNumber: number | null }
+type Props = {
+  totals: FormulaTotals
+  amounts: readonly Amounts[]
+  emulsionType: EmulsionType
+  beforeNumber: number | null
+}
 
-/** The sheet's last line: the sum, what is missing to 100, and what a kilogram costs. */
-export function TotalRow({ totals, amounts, beforeNumber }: Props) {
+/** The sheet's last lines: the sum, what is missing to 100, oil to water, and what a kilogram and a jar cost. */
+export function TotalRow({ totals, amounts, emulsionType, beforeNumber }: Props) {
+  const parts = oilAndWater(emulsionType, amounts)
   const { missingThousandths: missing, costCentsPerKg: cost, linesWithoutPrice } = totals
   return (
     <tfoot>
@@ -51,6 +61,51 @@ export function TotalRow({ totals, amounts, beforeNumber }: Props) {
           )}
         </td>
       </tr>
+      {amounts.length ? (
+        <tr className="align-top">
+          <td colSpan={4} className="px-2 pt-1 text-right text-13 text-soft">
+            oil to water, by mass:{' '}
+            <FigureDetails
+              figure={oilWaterText(parts)}
+              facts={() => oilWaterFacts(parts)}
+              className="text-15 text-ink"
+            />
+          </td>
+          <td colSpan={4} className="px-1.5 pt-1">
+            {cost === null ? null : <JarCost totals={totals} cost={cost} />}
+          </td>
+        </tr>
+      ) : null}
     </tfoot>
+  )
+}
+
+/** What a jar's content costs; how much goes into one is typed here, as packs differ. */
+function JarCost({ totals, cost }: { totals: FormulaTotals; cost: number }) {
+  const [typed, setTyped] = useState('50')
+  const grams = readDecimal(typed)
+  const figure = grams === null || grams <= 0 ? null : grouped(jarCents(cost, grams) / 100, 3)
+  return (
+    <span className="flex flex-wrap items-baseline gap-x-1 text-13 text-soft">
+      a jar of
+      <input
+        aria-label="Grams in a jar"
+        inputMode="decimal"
+        autoComplete="off"
+        value={typed}
+        onChange={(event) => setTyped(event.target.value)}
+        className="h-6 w-11 rounded border border-rule bg-transparent px-1 text-right text-14 text-ink focus:bg-typed"
+      />
+      g:{' '}
+      {figure && grams ? (
+        <FigureDetails
+          figure={figure}
+          facts={() => jarCostFacts(totals, grams, figure)}
+          className="text-15 font-650 text-ink"
+        />
+      ) : (
+        'type its grams'
+      )}
+    </span>
   )
 }

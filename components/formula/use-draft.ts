@@ -1,42 +1,12 @@
 'use client'
 
-import { useEffect, useMemo, useState } from 'react'
+import { useCallback, useEffect, useMemo, useState } from 'react'
 import { newId } from '@/lib/db/id'
 import { ClientError, send } from '@/lib/http/fetcher'
 import type { FormulaPage } from '@/lib/formula/queries/get-formula'
-import {
-  isBlankLine,
-  isBlankStep,
-  readAmounts,
-  readLine,
-  readStep,
-  remainderOf,
-  typeLine,
-  typeStep,
-  type LineErrors,
-  type StepErrors,
-  type TypedLine,
-  type TypedStep,
-} from '@/lib/formula/rules/typed'
-import type { EmulsionType } from '@/lib/formula/schema'
-
-export type Draft = {
-  version: number
-  name: string
-  emulsionType: EmulsionType
-  note: string
-  lines: TypedLine[]
-  steps: TypedStep[]
-}
-
-export type Problems = {
-  name?: string
-  emulsionType?: string
-  lines: Record<string, LineErrors>
-  steps: Record<string, StepErrors>
-}
-
-const noProblems: Problems = { lines: {}, steps: {} }
+import { begin, record, redo, undo, type History } from '@/lib/formula/rules/history'
+import { readAmounts, typeLine, typeStep, type TypedLine, type TypedStep } from '@/lib/formula/rules/typed'
+import { fromFields, noProblems, readDraft, type Draft } from './read-draft'
 
 const placeOf = (versionId: string, personId: string) => `stillstand:formula:${personId}:${versionId}`
 
@@ -45,17 +15,22 @@ export function hasKeptDraft(versionId: string, personId: string): boolean {
   return readKept(placeOf(versionId, personId)) !== null
 }
 
+/** What changes a draft; `at` names the field, so that typing on in it is one step to take back. */
+export type ChangeDraft = (change: (draft: Draft) => Partial<Draft>, at?: string | null) => void
+
 /** The draft on screen: what the server has, or what this person typed here before a reload. */
 export function useDraft(formula: FormulaPage, personId: string, isClient: boolean) {
   const place = placeOf(formula.versionId, personId)
   const server = useMemo(() => draftOf(formula), [formula])
   const [kept] = useState(() => (isClient && formula.state === 'draft' ? readKept(place) : null))
   const [base, setBase] = useState(server)
-  const [draft, setDraft] = useState<Draft>(kept ?? server)
+  const [history, setHistory] = useState<History<Draft>>(() => begin(kept ?? server))
   const [problems, setProblems] = useState(noProblems)
   const [refusal, setRefusal] = useState<ClientError | null>(null)
   const [isSaving, setIsSaving] = useState(false)
-  const isDirty = useMemo(() => textOf(draft) !== textOf(base), [draft, base])
+  const draft = history.now
+  const baseText = useMemo(() => textOf(base), [base])
+  const isDirty = useMemo(() => textOf(draft) !== baseText, [draft, baseText])
 
   useEffect(() => {
     if (!isClient || formula.state !== 'draft') return
@@ -63,13 +38,18 @@ export function useDraft(formula: FormulaPage, personId: string, isClient: boole
     else localStorage.removeItem(place)
   }, [isClient, isDirty, draft, place, formula.state])
 
-  function change(next: Partial<Draft>) {
-    setDraft((now) => ({ ...now, ...next }))
-  }
+  const change: ChangeDraft = useCallback((next, at = null) => {
+    setHistory((was) => {
+      const changed = next(was.now)
+      return isNothing(was.now, changed) ? was : record(was, { ...was.now, ...changed }, at)
+    })
+  }, [])
+  const takeBack = useCallback(() => setHistory((was) => atVersionOf(was, undo(was))), [])
+  const doAgain = useCallback(() => setHistory((was) => atVersionOf(was, redo(was))), [])
 
   function startAgain() {
     setBase(server)
-    setDraft(server)
+    setHistory((was) => record(was, server, null))
     setProblems(noProblems)
     setRefusal(null)
   }
@@ -87,7 +67,8 @@ export function useDraft(formula: FormulaPage, personId: string, isClient: boole
       const saved = await send<{ version: number }>(url, 'PUT', body, { key: newId() })
       const now = { ...draft, version: saved.version, ...(read.tidy ?? {}) }
       setBase(now)
-      setDraft(now)
+      // What was typed while it was on its way stays, and is not saved yet.
+      setHistory((was) => ({ ...was, now: was.now === draft ? now : { ...was.now, version: saved.version } }))
       return true
     } catch (thrown) {
       if (!(thrown instanceof ClientError)) throw thrown
@@ -101,7 +82,10 @@ export function useDraft(formula: FormulaPage, personId: string, isClient: boole
 
   const isKept = kept !== null && textOf(kept) !== textOf(server) && isDirty
   const amounts = useMemo(() => readAmounts(draft.lines), [draft.lines])
-  return { draft, change, amounts, isDirty, isKept, problems, refusal, isSaving, save, startAgain }
+  return {
+    ...{ draft, change, amounts, isDirty, isKept, problems, refusal, isSaving, save, startAgain },
+    undo: { canUndo: history.past.length > 0, canRedo: history.future.length > 0, takeBack, doAgain },
+  }
 }
 
 export type DraftHandle = ReturnType<typeof useDraft>
@@ -131,51 +115,17 @@ function readKept(place: string): Draft | null {
   }
 }
 
-/** Blank rows are left out; a row that cannot be read keeps its text and gets its sentence. */
-function readDraft(draft: Draft) {
-  const problems: Problems = { lines: {}, steps: {} }
-  if (!draft.name.trim()) problems.name = 'Give the formula a name, such as silicone-free cream.'
-  const typedLines = draft.lines.filter((line) => !isBlankLine(line) || line.isRemainder)
-  const typedSteps = draft.steps.filter((step) => !isBlankStep(step))
-  const remainder = remainderOf(typedLines)
-  const lines = typedLines.flatMap((typed) => {
-    const { line, errors } = readLine(typed, remainder)
-    if (!line) problems.lines[typed.id] = errors
-    return line ?? []
-  })
-  const steps = typedSteps.flatMap((typed) => {
-    const { step, errors } = readStep(typed)
-    if (!step) problems.steps[typed.id] = errors
-    return step ?? []
-  })
-  const isWhole = !problems.name && lines.length === typedLines.length && steps.length === typedSteps.length
-  const { name, emulsionType, note } = draft
-  return {
-    problems,
-    body: isWhole ? { name, emulsionType, note, lines, steps } : null,
-    tidy: isWhole ? { lines: typedLines, steps: typedSteps } : null,
-  }
+/** The version is the server's; taking a change back does not take a save back. */
+function atVersionOf(was: History<Draft>, next: History<Draft>): History<Draft> {
+  if (next.now === was.now) return next
+  return { ...next, now: { ...next.now, version: was.now.version } }
 }
 
-/** Field paths of a refusal ("lines.3.density") to the rows that they name. */
-function fromFields(fields: Record<string, string>, draft: Draft): Problems {
-  const problems: Problems = { lines: {}, steps: {} }
-  const names: Record<string, string> = {
-    ...{ percentThousandths: 'percent', priceCentsPerKg: 'price' },
-    ...{ speedRpm: 'speed', temperatureC: 'temperature' },
-  }
-  const lines = draft.lines.filter((line) => !isBlankLine(line) || line.isRemainder)
-  const steps = draft.steps.filter((step) => !isBlankStep(step))
-  for (const [path, sentence] of Object.entries(fields)) {
-    const [part, index, name = ''] = path.split('.')
-    const rows = part === 'lines' ? lines : part === 'steps' ? steps : null
-    const row = rows?.[Number(index)]
-    const field = names[name] ?? name
-    if (part === 'name' || part === 'emulsionType') problems[part] = sentence
-    else if (row && part === 'lines')
-      problems.lines[row.id] = { ...problems.lines[row.id], [field]: sentence }
-    else if (row && part === 'steps')
-      problems.steps[row.id] = { ...problems.steps[row.id], [field]: sentence }
-  }
-  return problems
+/** Rows that were put where they stand already. */
+function isNothing(now: Draft, changed: Partial<Draft>): boolean {
+  return Object.entries(changed).every(([key, value]) => {
+    const old = now[key as keyof Draft]
+    if (!Array.isArray(value) || !Array.isArray(old)) return value === old
+    return value.length === old.length && value.every((row, index) => row === old[index])
+  })
 }

@@ -3,6 +3,10 @@ import { tableOf, type Figure } from './bench/figure'
 // `npm run bench NAME`: measures, prints figures beside their targets, exits 1 on a miss.
 
 const benches: Record<string, { says: string; load: () => Promise<() => Figure[]> }> = {
+  formula: {
+    says: 'a keystroke in a formula of 200 lines, a pasted block read',
+    load: async () => (await import('./bench/formula')).benchFormula,
+  },
   science: {
     says: 'regression against R, a large study recomputed, memory, the start of calc',
     load: async () => (await import('./bench/science')).benchScience,

@@ -14,6 +14,10 @@ export const formulaCode = z
   .min(1, 'Give the formula a code, such as N86.')
   .max(20, 'A code has at most 20 letters and digits.')
   .regex(/^[A-Za-z0-9]+$/, 'A code has letters and digits only, such as N86.')
+  .refine(
+    (code) => !/^(new|compare)$/i.test(code),
+    'New and compare are pages of the list. Choose another code, such as N86.',
+  )
 
 const text = (max: number) => z.string().trim().max(max, `At most ${max} signs fit here.`)
 export const phaseName = text(20).regex(/^[A-Za-z0-9]*$/, 'A phase is a letter, such as A.')
@@ -68,10 +72,12 @@ export const formulaStep = z.object({
 })
 export type FormulaStep = z.infer<typeof formulaStep>
 
+export const mostLines = 200
+
 const name = text(120).min(1, 'Give the formula a name, such as silicone-free cream.')
 const lines = z
   .array(formulaLine)
-  .max(60, 'A formula has at most 60 lines.')
+  .max(mostLines, `A formula has at most ${mostLines} lines.`)
   .refine((all) => all.filter((line) => line.isRemainder).length <= 1, 'Only one line can be q.s. to 100.')
   .refine(isOnce, 'A line is in this formula twice. Load the page again.')
 const steps = z
@@ -108,6 +114,49 @@ export type SaveFormulaInput = z.infer<typeof saveFormulaInput>
 export const newVersionInput = z.object({ id: z.uuid(), fromVersionId: z.uuid(), note })
 export type NewVersionInput = z.infer<typeof newVersionInput>
 
+/** A family is a grid of at most this many. */
+export const mostVariants = 12
+const variantShares = z.array(percentThousandths).min(1).max(2)
+const variantMember = z.object({
+  id: z.uuid(),
+  versionId: z.uuid(),
+  code: formulaCode,
+  name,
+  /** One share for each varied line, in their order. */
+  shares: variantShares,
+})
+
+export const makeVariantsInput = z
+  .object({
+    fromVersionId: z.uuid(),
+    lineIds: z
+      .array(z.uuid())
+      .min(1, 'Choose an ingredient to vary.')
+      .max(2, 'A family varies one or two ingredients.')
+      .refine(
+        (ids) => new Set(ids).size === ids.length,
+        'The two ingredients are the same line. Choose another.',
+      ),
+    members: z
+      .array(variantMember)
+      .min(1, 'Give the levels, such as 0.20; 0.30; 0.40.')
+      .max(mostVariants, `A family has at most ${mostVariants} formulas. Take fewer levels.`)
+      .refine(isOnce, 'A formula is in this family twice. Load the page again.'),
+  })
+  .superRefine(({ lineIds, members }, context) => {
+    const codes = members.map((member) => member.code.toLowerCase())
+    const levels = members.map((member) => member.shares.join(' '))
+    members.forEach(({ code, shares }, index) => {
+      const say = (field: string, message: string) =>
+        context.addIssue({ code: 'custom', path: ['members', index, field], message })
+      if (codes.indexOf(code.toLowerCase()) < index)
+        say('code', `${code} stands twice. Each formula has its own.`)
+      if (levels.indexOf(shares.join(' ')) < index) say('shares', `${code} has the levels of another one.`)
+      if (shares.length !== lineIds.length) say('shares', `${code} has not one share for each ingredient.`)
+    })
+  })
+export type MakeVariantsInput = z.infer<typeof makeVariantsInput>
+
 export const formulaSorts = ['code', 'name', 'emulsionType', 'internal', 'batches', 'state'] as const
 export const formulaListQuery = z.object({
   q: z.string().max(200).catch(''),
@@ -122,6 +171,25 @@ export const formulaPageQuery = z.object({
   version: z.coerce.number().int().positive().max(100_000).optional().catch(undefined),
 })
 
+/** Two versions: of one formula, or `with` another one's. */
+export const differenceQuery = z.object({
+  from: z.coerce.number().int().positive().max(100_000).optional().catch(undefined),
+  to: z.coerce.number().int().positive().max(100_000).optional().catch(undefined),
+  with: z.string().max(40).optional().catch(undefined),
+})
+export type DifferenceQuery = z.infer<typeof differenceQuery>
+
+/** How many formulas are compared at once. */
+export const mostCompared = 12
+
+/** The formulas that are compared, as the list's own form sends them: code=N86a&code=N86b. */
+export const compareQuery = z.object({
+  code: z.preprocess(
+    (value) => (Array.isArray(value) ? value : value === undefined ? [] : [value]),
+    z.array(z.string().max(40)).catch([]),
+  ),
+})
+
 function isOnce(rows: { id: string }[]): boolean {
   return new Set(rows.map((row) => row.id)).size === rows.length
 }
@@ -130,3 +198,5 @@ export const formulasKey = ({ q, sort, order }: FormulaListQuery) =>
   `/api/formulas?${new URLSearchParams({ q, sort, order })}`
 export const formulaKey = (code: string, number?: number) =>
   `/api/formulas/${encodeURIComponent(code)}${number ? `?version=${number}` : ''}`
+export const compareAddress = (codes: readonly string[]) =>
+  `/formulas/compare?${new URLSearchParams(codes.map((code) => ['code', code]))}`

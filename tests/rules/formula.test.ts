@@ -3,7 +3,6 @@ import fc from 'fast-check'
 import { formulaChecks } from '@/lib/formula/rules/checks'
 import { formulaFinding } from '@/lib/formula/rules/finding'
 import { grouped, percentText, readDecimal, readScaled } from '@/lib/formula/rules/numbers'
-import { readPastedLines } from '@/lib/formula/rules/paste'
 import { formulaTotals, phaseTotals, remainderThousandths } from '@/lib/formula/rules/totals'
 
 describe('numbers as people type them', () => {
@@ -69,37 +68,6 @@ describe('totals', () => {
   it('the remainder makes up 100 % and is never below 0', () => {
     expect(remainderThousandths([line(14, 1, false), line(0.35, 1, true)])).toBe(85_650)
     expect(remainderThousandths([line(100, 1, false), line(5, 1, true)])).toBe(0)
-  })
-})
-
-describe('a pasted block', () => {
-  it('reads tabs with decimal commas, a heading row, phases and prices', () => {
-    const text =
-      'Phase\tINCI\tFunction\t%\nA\tSqualane\tlight oil\t12,40\t0,810\t21,00\nB\tAqua\twater\tq.s.\t0,998\n'
-    expect(readPastedLines(text)).toMatchObject([
-      {
-        phase: 'A',
-        inciName: 'Squalane',
-        function: 'light oil',
-        percent: '12,40',
-        density: '0,810',
-        price: '21,00',
-      },
-      { phase: 'B', inciName: 'Aqua', function: 'water' },
-    ])
-  })
-
-  it('reads commas, quoted names and a name that holds a comma', () => {
-    expect(readPastedLines('1,2-Hexanediol,humectant,2.0\n"Oil, refined",oil,5 %')).toMatchObject([
-      { inciName: '1,2-Hexanediol', function: 'humectant', percent: '2.0' },
-      { inciName: 'Oil, refined', function: 'oil', percent: '5' },
-    ])
-  })
-
-  it('is no block when it is one cell or holds no shares', () => {
-    expect(readPastedLines('Squalane')).toBeNull()
-    expect(readPastedLines('Squalane\toil')).toBeNull()
-    expect(readPastedLines('')).toBeNull()
   })
 })
 

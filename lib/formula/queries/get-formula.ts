@@ -2,8 +2,9 @@ import type { Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
 import type { EmulsionType } from '../schema'
+import { listFamilies } from './list-families'
 
-/** One version of a formula (the latest unless a number is given) with what its page shows: four statements. */
+/** One version of a formula (the latest unless a number is given) with what its page shows: five statements. */
 export async function getFormula(db: Db, _actor: Actor, code: string, number?: number) {
   const versions = await db
     .selectFrom('formula')
@@ -15,6 +16,7 @@ export async function getFormula(db: Db, _actor: Actor, code: string, number?: n
       'formula.code',
       'formula.name',
       'formula.emulsionType',
+      'formula.familyOfVersionId',
       'client.name as clientName',
       'formulaVersion.id',
       'formulaVersion.number',
@@ -36,10 +38,11 @@ export async function getFormula(db: Db, _actor: Actor, code: string, number?: n
     )
   }
   const before = versions.filter((version) => version.number < shown.number).at(-1)
-  const [lines, steps, batches] = await Promise.all([
+  const [lines, steps, batches, families] = await Promise.all([
     listLines(db, before ? [shown.id, before.id] : [shown.id]),
     listSteps(db, shown.id),
     listBatchesMade(db, shown.formulaId),
+    listFamilies(db, shown.familyOfVersionId, shown.formulaId),
   ])
   return {
     id: shown.formulaId,
@@ -55,6 +58,7 @@ export async function getFormula(db: Db, _actor: Actor, code: string, number?: n
     createdBy: shown.createdBy,
     createdAt: shown.createdAt,
     batches,
+    families,
     lines: lines.filter((line) => line.formulaVersionId === shown.id),
     steps,
     /** The version before, for "was". */

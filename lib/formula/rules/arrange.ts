@@ -38,9 +38,77 @@ export function moveLine(lines: readonly TypedLine[], id: string, by: -1 | 1): T
   return swap(lines, from, from + by)
 }
 
+/** A line put beside another one, whose phase it takes over. */
+export function placeLine(
+  lines: readonly TypedLine[],
+  id: string,
+  besideId: string,
+  side: 'before' | 'after',
+): TypedLine[] {
+  const beside = lines.find((line) => line.id === besideId)
+  const placed = placeRow(lines, id, besideId, side)
+  if (!beside) return placed
+  return placed.map((line) =>
+    line.id === id && line.phase !== beside.phase
+      ? { ...line, phase: beside.phase, isInternal: beside.isInternal }
+      : line,
+  )
+}
+
+/** A row put before or after another one. */
+export function placeRow<Row extends { id: string }>(
+  rows: readonly Row[],
+  id: string,
+  besideId: string,
+  side: 'before' | 'after',
+): Row[] {
+  const row = rows.find((one) => one.id === id)
+  const rest = rows.filter((one) => one.id !== id)
+  const at = rest.findIndex((one) => one.id === besideId)
+  if (!row || at < 0) return [...rows]
+  const cut = side === 'before' ? at : at + 1
+  return [...rest.slice(0, cut), row, ...rest.slice(cut)]
+}
+
 export function moveRow<Row extends { id: string }>(rows: readonly Row[], id: string, by: -1 | 1): Row[] {
   const from = rows.findIndex((row) => row.id === id)
   return from < 0 || !rows[from + by] ? [...rows] : swap(rows, from, from + by)
+}
+
+const numberColumns = ['percent', 'density', 'price'] as const
+
+/**
+ * Numbers pasted without names, put into the cells from one of them rightwards and downwards; a sentence
+ * where they do not fit.
+ */
+export function fillNumbers(
+  lines: readonly TypedLine[],
+  id: string,
+  column: string,
+  rows: readonly (readonly string[])[],
+): TypedLine[] | string {
+  const firstColumn = numberColumns.findIndex((one) => one === column)
+  if (firstColumn < 0)
+    return 'These are numbers without names. Put the cursor into % w/w, g/mL or per kg, then paste them again.'
+  const first = lines.findIndex((line) => line.id === id)
+  if (first + rows.length > lines.length) {
+    return `That are ${rows.length} numbers, and only ${lines.length - first} lines stand from here on. Nothing was changed.`
+  }
+  return lines.map((line, index) => {
+    const row = rows[index - first]
+    if (!row || index < first) return line
+    return row.reduce(
+      (filled, cell, offset) => withNumber(filled, numberColumns[firstColumn + offset], cell),
+      line,
+    )
+  })
+}
+
+function withNumber(line: TypedLine, column: (typeof numberColumns)[number] | undefined, cell: string) {
+  if (!column || cell === '') return line
+  if (column !== 'percent') return { ...line, [column]: cell }
+  if (/^q/i.test(cell)) return line
+  return line.isRemainder ? line : { ...line, percent: cell }
 }
 
 function swap<Row>(rows: readonly Row[], a: number, b: number): Row[] {

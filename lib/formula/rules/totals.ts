@@ -1,5 +1,5 @@
 import { phaseFraction } from '@/lib/science/phase-fraction'
-import type { FormulaLine } from '../schema'
+import type { EmulsionType, FormulaLine } from '../schema'
 
 export const wholeThousandths = 100_000
 
@@ -46,6 +46,23 @@ export function formulaTotals(lines: readonly Amounts[]): FormulaTotals {
 /** What the "q.s. to 100" line has to be, never below 0. */
 export function remainderThousandths(others: readonly { percentThousandths: number }[]): number {
   return Math.max(0, wholeThousandths - others.reduce((sum, line) => sum + line.percentThousandths, 0))
+}
+
+/** How much of the formula is oil (or silicone) phase and how much water phase, by mass. */
+export function oilAndWater(
+  type: EmulsionType,
+  lines: readonly Pick<Amounts, 'percentThousandths' | 'isInternal'>[],
+): { oilThousandths: number; waterThousandths: number } {
+  const oilIsInside = type === 'oil-in-water'
+  const oil = lines.filter((line) => line.isInternal === oilIsInside)
+  const water = lines.filter((line) => line.isInternal !== oilIsInside)
+  const sum = (some: typeof oil) => some.reduce((all, line) => all + line.percentThousandths, 0)
+  return { oilThousandths: sum(oil), waterThousandths: sum(water) }
+}
+
+/** What a jar of that many grams costs, in cents and parts of them. */
+export function jarCents(costCentsPerKg: number, grams: number): number {
+  return (costCentsPerKg * grams) / 1000
 }
 
 export type PhaseTotal = {

@@ -24,6 +24,29 @@ export const costMethod: Method = {
   topic: null,
 }
 
+export const jarCostMethod: Method = {
+  name: 'Cost of a jar’s content',
+  formula: ['Cost of a kilogram × grams in a jar ÷ 1000. Lines without a price count as nothing.'],
+  inputs: [
+    { key: 'perKg', says: 'cost of a kilogram', unit: 'per kg' },
+    { key: 'grams', says: 'in a jar', unit: 'g' },
+    { key: 'unpriced', says: 'lines without a price', unit: '' },
+  ],
+  sources: [arithmetic],
+  topic: null,
+}
+
+export const oilWaterMethod: Method = {
+  name: 'Oil to water',
+  formula: ['The sum of % w/w over the lines of the oil phase, to that over the lines of the water phase.'],
+  inputs: [
+    { key: 'oil', says: 'oil phase', unit: '% w/w' },
+    { key: 'water', says: 'water phase', unit: '% w/w' },
+  ],
+  sources: [arithmetic],
+  topic: null,
+}
+
 export const weighingMethod: Method = {
   name: 'Difference at the balance',
   formula: ['100 × (actual − target) ÷ target. The target is the batch’s size × % w/w ÷ 100.'],
