@@ -100,7 +100,16 @@ function Lines({ caption, lines }: { caption: string; lines: TrustLine[] }) {
       rows={lines}
       rowKey={(line) => line.what}
       columns={[
-        { key: 'what', title: 'what happened', cell: (line) => line.what },
+        {
+          key: 'what',
+          title: 'what happened',
+          cell: (line) => (
+            <>
+              {line.what}
+              <span className="block text-13 text-soft sm:hidden">{line.means}</span>
+            </>
+          ),
+        },
         {
           key: 'count',
           title: 'in 100',
