@@ -1,6 +1,6 @@
 'use client'
 
-import { useMemo } from 'react'
+import { useMemo, type ReactNode } from 'react'
 import { Drawn } from '../marks/drawn'
 import { emulsionShapes, spotFor } from './emulsion-shapes'
 import type { EmulsionInput } from './emulsion-shapes'
@@ -8,7 +8,7 @@ import { useWidth } from './use-width'
 
 export type EmulsionQuestion = {
   id: string
-  title: string
+  title: ReactNode
   answer: string
   reason: string
   isOpen: boolean

@@ -1,11 +1,13 @@
 import type { FormulaCheck } from '@/lib/formula/rules/checks'
+import { CheckTitle } from './checks-room'
+import { aboutText, answerText } from './checks-words'
 
-/** Questions with a reason each; what the formula does not answer itself is open, in the alarm colour. */
+/** Questions with a reason each; what neither the formula nor a person answers is open, in the alarm colour. */
 export function Checks({ checks }: { checks: FormulaCheck[] }) {
   return (
     <ul className="flex flex-col gap-4">
       {checks.map((check) => (
-        <li key={check.key} className="relative pl-5">
+        <li key={check.key} className="relative break-inside-avoid pl-5">
           <svg
             viewBox="0 0 20 12"
             width="20"
@@ -16,9 +18,15 @@ export function Checks({ checks }: { checks: FormulaCheck[] }) {
             <path d="M8 6H20" stroke={check.isOpen ? 'var(--alarm)' : 'var(--ink)'} strokeWidth="1.5" />
             <circle cx="6" cy="6" r="4.5" fill={check.isOpen ? 'var(--alarm)' : 'var(--ink)'} />
           </svg>
-          <p className="font-650">{check.question}</p>
-          <p className={check.isOpen ? 'font-650 text-alarm' : ''}>{check.answer}</p>
-          <p className="text-14 text-soft">{check.reason}</p>
+          <p className="font-650">
+            <CheckTitle check={check} />
+          </p>
+          <p className={`[overflow-wrap:anywhere] ${check.isOpen ? 'font-650 text-alarm' : ''}`}>
+            {answerText(check)}
+          </p>
+          <p className="text-14 text-soft">
+            {check.reason} {aboutText(check)} <span className="whitespace-nowrap">[{check.mark}]</span>
+          </p>
         </li>
       ))}
     </ul>

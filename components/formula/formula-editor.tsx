@@ -4,17 +4,18 @@ import Link from 'next/link'
 import { useEffect, useEffectEvent, useMemo } from 'react'
 import { Heading } from '@/components/ui/heading'
 import type { FormulaPage } from '@/lib/formula/queries/get-formula'
-import { formulaChecks } from '@/lib/formula/rules/checks'
 import { formulaFinding } from '@/lib/formula/rules/finding'
 import { percentText } from '@/lib/formula/rules/numbers'
 import { formulaTotals, phaseTotals } from '@/lib/formula/rules/totals'
 import { readStep } from '@/lib/formula/rules/typed'
 import { toast } from '@/components/ui/toast'
+import { ChecksRoom } from './checks-room'
 import { DraftBar } from './draft-bar'
 import { FormulaActs } from './formula-acts'
 import { LinesPart } from './lines-part'
 import { MadePart } from './made-part'
 import { ProcessPart } from './process-part'
+import { useChecks } from './use-checks'
 import { useDraft } from './use-draft'
 import { VersionsPart } from './versions-part'
 import type { FormulaPart } from './formula-view'
@@ -35,7 +36,7 @@ export function FormulaEditor({ formula, part, personId, mayWrite, isClient, onR
   const isOpen = mayWrite && formula.state === 'draft'
   const totals = useMemo(() => formulaTotals(amounts), [amounts])
   const steps = useMemo(() => draft.steps.flatMap((typed) => readStep(typed).step ?? []), [draft.steps])
-  const checks = formulaChecks(draft.emulsionType, amounts, steps)
+  const checks = useChecks(formula, draft, steps)
   const finding = formulaFinding(draft.emulsionType, totals, checks)
   const before = formula.before
     ? new Map(
@@ -96,24 +97,32 @@ export function FormulaEditor({ formula, part, personId, mayWrite, isClient, onR
         }
       />
       <DraftBar formula={formula} handle={handle} onReload={onReload} onSaved={onSaved} />
-      <div className="mt-6">
-        {part === 'lines' ? (
-          <LinesPart
-            formula={formula}
-            handle={handle}
-            isOpen={isOpen}
-            totals={totals}
-            phases={phaseTotals(amounts)}
-            checks={checks}
-            before={before}
-          />
-        ) : null}
-        {part === 'process' ? (
-          <ProcessPart handle={handle} isOpen={isOpen} steps={steps} checks={checks} />
-        ) : null}
-        {part === 'batches' ? <MadePart formula={formula} /> : null}
-        {part === 'versions' ? <VersionsPart formula={formula} /> : null}
-      </div>
+      <ChecksRoom
+        formula={formula}
+        checks={checks}
+        mayWrite={mayWrite}
+        isDirty={handle.isDirty}
+        onAnswered={onSaved}
+      >
+        <div className="mt-6">
+          {part === 'lines' ? (
+            <LinesPart
+              formula={formula}
+              handle={handle}
+              isOpen={isOpen}
+              totals={totals}
+              phases={phaseTotals(amounts)}
+              checks={checks}
+              before={before}
+            />
+          ) : null}
+          {part === 'process' ? (
+            <ProcessPart handle={handle} isOpen={isOpen} steps={steps} checks={checks} />
+          ) : null}
+          {part === 'batches' ? <MadePart formula={formula} /> : null}
+          {part === 'versions' ? <VersionsPart formula={formula} /> : null}
+        </div>
+      </ChecksRoom>
     </div>
   )
 }

@@ -9,6 +9,8 @@ import { formulaTotals, type Amounts, type FormulaTotals } from '@/lib/formula/r
 import type { EmulsionType } from '@/lib/formula/schema'
 import { FigureDetails } from '@/components/ui/figure-details'
 import { Checks } from './checks'
+import { CheckTitle } from './checks-room'
+import { answerText } from './checks-words'
 import { highInternalFacts, insideFacts } from './formula-facts'
 
 type Props = {
@@ -32,8 +34,9 @@ export function InsideDrawing({ totals, amounts, before, checks, emulsionType }:
       </div>
     )
   }
-  const pointing = checks.filter((check) => !beside.includes(check.key))
-  const others = checks.filter((check) => beside.includes(check.key))
+  // What the drawing can point at stands beside it; the others have no place in it.
+  const pointing = checks.filter((check) => check.at !== null)
+  const others = checks.filter((check) => check.at === null)
   const was = before ? formulaTotals(before.lines).internalVolumePercent : null
   return (
     <div className="min-w-0">
@@ -73,16 +76,16 @@ export function InsideDrawing({ totals, amounts, before, checks, emulsionType }:
           note="The size of the drops has not been measured."
           questions={pointing.map((check) => ({
             id: check.key,
-            title: check.question,
-            answer: check.answer,
-            reason: check.reason,
+            title: <CheckTitle check={check} />,
+            answer: answerText(check, mostBeside),
+            reason: `${check.reason} [${check.mark}]`,
             isOpen: check.isOpen,
-            at: drops.includes(check.key) ? 'drop' : 'film',
+            at: check.at ?? 'film',
           }))}
         />
       </div>
       {others.length ? (
-        <div className="mt-6">
+        <div className="mt-6 gap-8 sm:columns-2 [&_li]:mb-4 [&_ul]:block">
           <Checks checks={others} />
         </div>
       ) : null}
@@ -90,7 +93,5 @@ export function InsideDrawing({ totals, amounts, before, checks, emulsionType }:
   )
 }
 
-/** Questions about what is in the drops; the others are about the film between them. */
-const drops: FormulaCheck['key'][] = ['gel', 'slow']
-/** Five questions fit beside the drawing; what is dissolved in the drops cannot be pointed at. */
-const beside: FormulaCheck['key'][] = ['salt', 'agree']
+/** A note beside the drawing is told as far as its pointer has room; the whole is in the question. */
+const mostBeside = 90

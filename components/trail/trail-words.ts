@@ -10,6 +10,7 @@ export const tableWords: Record<string, string> = {
   flag: 'flag',
   flag_comment: 'comment on a flag',
   formula: 'formula',
+  formula_answer: 'answer to a question of a formula',
   formula_line: 'line of a formula',
   formula_step: 'process step of a formula',
   formula_version: 'version of a formula',

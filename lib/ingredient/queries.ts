@@ -1,6 +1,6 @@
 import { sql, type Expression, type SqlBool } from 'kysely'
 import type { Actor } from '@/lib/auth/actor'
-import type { Db } from '@/lib/db/client'
+import type { Db, Trx } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
 import { comparable, matchOf } from './rules'
 import { fromMemory, ingredientPageSize, type IngredientBookQuery } from './schema'
@@ -66,6 +66,21 @@ export async function listIngredientFacts(db: Db, _actor: Actor, ids: readonly s
     .selectFrom('ingredient')
     .select(['ingredient.id', 'ingredient.density', ...figureColumns])
     .where('ingredient.id', 'in', [...ids])
+    .execute()
+}
+
+/** The same, of what the lines of a formula's version name. */
+export async function listFactsOfVersion(db: Db | Trx, formulaVersionId: string) {
+  return db
+    .selectFrom('ingredient')
+    .select(['ingredient.id', 'ingredient.density', ...figureColumns])
+    .where('ingredient.id', 'in', (eb) =>
+      eb
+        .selectFrom('formulaLine')
+        .select((line) => line.ref('formulaLine.ingredientId').$notNull().as('ingredientId'))
+        .where('formulaLine.formulaVersionId', '=', formulaVersionId)
+        .where('formulaLine.ingredientId', 'is not', null),
+    )
     .execute()
 }
 

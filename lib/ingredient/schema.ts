@@ -146,7 +146,7 @@ export const ingredientIds = z.object({
   id: z
     .union([z.uuid(), z.array(z.uuid())])
     .transform((ids) => (Array.isArray(ids) ? ids : [ids]))
-    .refine((ids) => ids.length <= 60, 'At most 60 ingredients are looked up at once.'),
+    .refine((ids) => ids.length <= 200, 'At most 200 ingredients are looked up at once.'),
 })
 
 export const ingredientPhases = ['any', 'oil', 'water'] as const

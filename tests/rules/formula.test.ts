@@ -1,6 +1,5 @@
 import { describe, expect, it } from 'vitest'
 import fc from 'fast-check'
-import { formulaChecks } from '@/lib/formula/rules/checks'
 import { formulaFinding } from '@/lib/formula/rules/finding'
 import { grouped, percentText, readDecimal, readScaled } from '@/lib/formula/rules/numbers'
 import { formulaTotals, phaseTotals, remainderThousandths } from '@/lib/formula/rules/totals'
@@ -68,50 +67,6 @@ describe('totals', () => {
   it('the remainder makes up 100 % and is never below 0', () => {
     expect(remainderThousandths([line(14, 1, false), line(0.35, 1, true)])).toBe(85_650)
     expect(remainderThousandths([line(100, 1, false), line(5, 1, true)])).toBe(0)
-  })
-})
-
-const named = (inciName: string, fn: string, percent: number, isInternal: boolean) => ({
-  ...{ inciName, function: fn, percentThousandths: percent * 1000, isInternal },
-})
-const step = (phase: string, more: object = {}) => ({
-  ...{ phase, instruction: 'Stir', speedRpm: null, minutes: null, temperatureC: null },
-  ...more,
-})
-
-describe('questions to a formula', () => {
-  const lines = [
-    named('PEG-30 Dipolyhydroxystearate', 'polymeric emulsifier', 2.4, false),
-    named('Magnesium Sulfate', 'electrolyte', 1, true),
-    named('Xanthan Gum', 'gels the water', 0.25, true),
-  ]
-  const keys = (checks: ReturnType<typeof formulaChecks>, isOpen: boolean) =>
-    checks.filter((check) => check.isOpen === isOpen).map((check) => check.key)
-
-  it('are answered from its own lines and steps', () => {
-    const joined = [step('A'), step('B into A', { speedRpm: 300, minutes: 44, temperatureC: 28 })]
-    const checks = formulaChecks('water-in-oil', lines, joined)
-    expect(keys(checks, true)).toEqual([])
-    expect(checks.find((check) => check.key === 'slow')?.answer).toBe('Yes, over 44 min in step 2.')
-    expect(checks.every((check) => check.reason.length > 10)).toBe(true)
-  })
-
-  it('stay open where the formula does not say, is fast or is warm', () => {
-    expect(keys(formulaChecks('water-in-oil', [], []), true)).toEqual([
-      ...['polymer', 'salt', 'gel', 'slow', 'shear', 'cold'],
-    ])
-    const rough = [
-      step('B into A', { minutes: 20, speedRpm: 300, temperatureC: 60 }),
-      step('', { speedRpm: 8000 }),
-    ]
-    expect(keys(formulaChecks('water-in-silicone', lines, rough), true)).toEqual(['shear', 'cold'])
-  })
-
-  it('ask about salt with an acrylic thickener, in either type of emulsion', () => {
-    const clash = [...lines, named('Carbomer', 'gels the water', 0.3, true)]
-    expect(keys(formulaChecks('water-in-oil', clash, []), true)).toContain('agree')
-    const outside = clash.map((row) => ({ ...row, isInternal: !row.isInternal }))
-    expect(keys(formulaChecks('oil-in-water', outside, []), true)).toEqual(['agree', 'shear'])
   })
 })
 

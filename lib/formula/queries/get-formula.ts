@@ -1,10 +1,11 @@
 import type { Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
+import { getGround } from '@/lib/formula-answer/queries'
 import { refuse } from '@/lib/http/errors'
 import type { EmulsionType } from '../schema'
 import { listFamilies } from './list-families'
 
-/** One version of a formula (the latest unless a number is given) with what its page shows: five statements. */
+/** One version of a formula (the latest unless a number is given) with what its page shows: ten statements. */
 export async function getFormula(db: Db, _actor: Actor, code: string, number?: number) {
   const versions = await db
     .selectFrom('formula')
@@ -38,11 +39,12 @@ export async function getFormula(db: Db, _actor: Actor, code: string, number?: n
     )
   }
   const before = versions.filter((version) => version.number < shown.number).at(-1)
-  const [lines, steps, batches, families] = await Promise.all([
+  const [lines, steps, batches, families, ground] = await Promise.all([
     listLines(db, before ? [shown.id, before.id] : [shown.id]),
     listSteps(db, shown.id),
     listBatchesMade(db, shown.formulaId),
     listFamilies(db, shown.familyOfVersionId, shown.formulaId),
+    getGround(db, { formulaId: shown.formulaId, versionId: shown.id }),
   ])
   return {
     id: shown.formulaId,
@@ -59,6 +61,7 @@ export async function getFormula(db: Db, _actor: Actor, code: string, number?: n
     createdAt: shown.createdAt,
     batches,
     families,
+    ground,
     lines: lines.filter((line) => line.formulaVersionId === shown.id),
     steps,
     /** The version before, for "was". */

@@ -1,162 +1,136 @@
-import type { EmulsionType, FormulaLine, FormulaStep } from '../schema'
-import { percentText } from './numbers'
+import type { EmulsionType } from '../schema'
+import { densityQuestion, meltQuestion, rangeQuestion } from './checks/book'
+import {
+  askedAbout,
+  noGround,
+  type Asked,
+  type CheckKey,
+  type CheckLine,
+  type CheckStep,
+  type GivenAnswer,
+  type Ground,
+  type Question,
+} from './checks/check'
+import { gelQuestion, polymerQuestion, saltQuestion, thickQuestion } from './checks/film'
+import { holdsQuestion } from './checks/holds'
+import { findJoining } from './checks/joining'
+import { neutralQuestion } from './checks/neutraliser'
+import { phQuestion, preservativeQuestion } from './checks/preservative'
+import { coldQuestion, finishQuestion, shearQuestion, slowQuestion } from './checks/process'
+import { agreeQuestion } from './checks/salt-and-polymer'
+import { formulaTotals } from './totals'
 
 export type FormulaCheck = {
-  key: 'polymer' | 'salt' | 'gel' | 'agree' | 'slow' | 'shear' | 'cold'
+  key: CheckKey
   question: string
   answer: string
-  /** Open means: the formula itself does not answer it yet. A question, never a rule. */
+  /** Neither the formula nor a person answers it yet. A question, never a rule. */
   isOpen: boolean
+  /** Whether a person is asked at all; false where the formula answers it itself. */
+  isAsked: boolean
   reason: string
+  mark: string
+  at: 'film' | 'drop' | null
+  lines: { id: string; name: string }[]
+  steps: readonly number[]
+  /** What it rests on; an answer holds while this stays the same. */
+  askedAbout: string
+  /** The latest answer, whether it still holds or not. */
+  given: GivenAnswer | null
+  /** Answered once, but what it rests on has changed since. */
+  isReopened: boolean
+  asksFor: Question['asksFor'] | null
+  /** The number that an earlier answer brought. */
+  value: number | null
 }
 
-type Line = Pick<FormulaLine, 'inciName' | 'function' | 'percentThousandths' | 'isInternal'>
-type Step = Pick<FormulaStep, 'phase' | 'instruction' | 'speedRpm' | 'minutes' | 'temperatureC'>
-
-/** [practice] Above these the question is asked again with the number in it; nothing is refused. */
-const gentleRpm = 600
-const coldC = 40
-
-/** Questions with a reason each, answered from the formula's own lines and steps. */
+/** Questions with a reason each, answered by the formula's own lines and steps or by a person's note. */
 export function formulaChecks(
   type: EmulsionType,
-  lines: readonly Line[],
-  steps: readonly Step[],
+  lines: readonly CheckLine[],
+  steps: readonly CheckStep[],
+  ground: Ground = noGround,
 ): FormulaCheck[] {
-  const used = lines.filter((line) => line.percentThousandths > 0)
-  const waterInside = type !== 'oil-in-water'
-  const inWater = used.filter((line) => line.isInternal === waterInside)
-  const inOil = used.filter((line) => line.isInternal !== waterInside)
-  const salt = inWater.filter((line) => /electrolyte|salt/i.test(line.function))
-  const gel = inWater.filter((line) => /gel|thicken/i.test(line.function))
-  const joining = findJoining(steps)
-  const checks = [agreeCheck(salt, gel), shearCheck(steps, joining)]
-  if (!waterInside) return checks
+  const latest = new Map(
+    ground.answers.toSorted((a, b) => (a.at < b.at ? -1 : 1)).map((given) => [given.question, given]),
+  )
+  // A later note without a pH leaves the target as it is.
+  const target = ground.answers
+    .filter((given) => given.question === 'ph' && given.value !== null)
+    .toSorted((a, b) => (a.at < b.at ? 1 : -1))[0]
+  const asked = lookAt(type, lines, steps, ground, target?.value ?? null)
+  return questionsTo(asked).map((question) => {
+    const about = askedAbout(asked, question)
+    const given = latest.get(question.key) ?? null
+    const holds = given !== null && given.askedAbout === about
+    return {
+      key: question.key,
+      question: question.question,
+      answer: question.answer,
+      isOpen: question.isOpen && !holds,
+      isAsked: question.isOpen,
+      reason: question.reason,
+      mark: question.mark,
+      at: question.at,
+      lines: question.lines.map(({ id, inciName }) => ({ id, name: inciName })),
+      steps: question.steps,
+      askedAbout: about,
+      given,
+      isReopened: question.isOpen && given !== null && !holds,
+      asksFor: question.asksFor ?? null,
+      value: question.key === 'ph' ? asked.targetPh : null,
+    }
+  })
+}
+
+function questionsTo(asked: Asked): Question[] {
+  const inside = asked.isWaterInside
+    ? {
+        film: [polymerQuestion(asked), gelQuestion(asked), slowQuestion(asked)],
+        cold: [coldQuestion(asked), thickQuestion(asked), saltQuestion(asked)],
+      }
+    : { film: [], cold: [] }
   return [
-    polymerCheck(inOil),
-    saltCheck(salt),
-    gelCheck(gel),
-    ...checks.slice(0, 1),
-    slowCheck(joining),
-    ...checks.slice(1),
-    coldCheck(joining),
-  ]
+    ...inside.film,
+    shearQuestion(asked),
+    ...inside.cold,
+    holdsQuestion(asked),
+    agreeQuestion(asked),
+    neutralQuestion(asked),
+    finishQuestion(asked),
+    preservativeQuestion(asked),
+    phQuestion(asked),
+    meltQuestion(asked),
+    rangeQuestion(asked),
+    densityQuestion(asked),
+  ].filter((question) => question !== null)
 }
 
-/** The step that brings two phases together says so: "B into A". */
-export function findJoining(steps: readonly Step[]): { step: Step; number: number } | null {
-  const index = steps.findIndex((step) => /\binto\b/i.test(step.phase))
-  const found =
-    index < 0 ? steps.findIndex((step) => /\b[A-Z]\d? into [A-Z]\b/.test(step.instruction)) : index
-  const step = steps[found]
-  return step ? { step, number: found + 1 } : null
-}
-
-function polymerCheck(inOil: readonly Line[]): FormulaCheck {
-  const polymer = inOil.find((line) => /polymer/i.test(line.function))
-  const thick = inOil.find((line) => /thicken/i.test(line.function))
+function lookAt(
+  type: EmulsionType,
+  all: readonly CheckLine[],
+  steps: readonly CheckStep[],
+  ground: Ground,
+  targetPh: number | null,
+): Asked {
+  const lines = all.filter((line) => line.percentThousandths > 0)
+  const isWaterInside = type !== 'oil-in-water'
+  const weighed = lines.flatMap((line) =>
+    line.density !== null && line.density > 0
+      ? [{ ...line, density: line.density, priceCentsPerKg: null }]
+      : [],
+  )
   return {
-    key: 'polymer',
-    question: 'Is a polymer in the oil?',
-    answer: polymer
-      ? `Yes, ${share(polymer)}.`
-      : `Open: no line of the oil is a polymeric emulsifier${thick ? `, ${thick.inciName} only thickens` : ''}.`,
-    isOpen: !polymer,
-    reason: 'Its coat keeps a thin film from being squeezed out.',
+    type,
+    isWaterInside,
+    lines,
+    inWater: lines.filter((line) => line.isInternal === isWaterInside),
+    inOil: lines.filter((line) => line.isInternal !== isWaterInside),
+    steps,
+    joining: findJoining(steps),
+    internalVolumePercent: formulaTotals(weighed).internalVolumePercent,
+    factsOf: (line) => (line.ingredientId ? (ground.facts[line.ingredientId] ?? null) : null),
+    borne: ground.borne,
+    targetPh,
   }
 }
-
-function saltCheck(salt: readonly Line[]): FormulaCheck {
-  return {
-    key: 'salt',
-    question: 'Is there salt in the water?',
-    answer: salt[0] ? `Yes, ${named(salt[0])}.` : 'Open: no line of the water is an electrolyte.',
-    isOpen: !salt.length,
-    reason: 'Salt holds the water in each drop, so that large drops do not grow at the cost of small ones.',
-  }
-}
-
-function gelCheck(gel: readonly Line[]): FormulaCheck {
-  return {
-    key: 'gel',
-    question: 'Is the water gelled first?',
-    answer: gel[0] ? `Yes, ${named(gel[0])}.` : 'Open: no line gels the water.',
-    isOpen: !gel.length,
-    reason: 'Stiff water lets a torn film close again.',
-  }
-}
-
-/** Charged acrylic thickeners lose their swelling to salt; the common gums bear it [practice]. */
-function agreeCheck(salt: readonly Line[], gel: readonly Line[]): FormulaCheck {
-  const shy = gel.find((line) => /carbomer|acrylate|acryloyl/i.test(line.inciName))
-  const clash = salt[0] && shy
-  return {
-    key: 'agree',
-    question: 'Do salt and gelling polymer agree?',
-    answer: clash
-      ? `Open: ${shy.inciName} thins where ${salt[0]?.inciName} is.`
-      : salt[0] && gel[0]
-        ? `Yes, nothing known against ${gel[0].inciName} with salt.`
-        : 'Nothing to disagree: not both are in it.',
-    isOpen: Boolean(clash),
-    reason: 'A charged polymer coils up in salt water, and the gel is gone.',
-  }
-}
-
-function slowCheck(joining: { step: Step; number: number } | null): FormulaCheck {
-  const minutes = joining?.step.minutes
-  return {
-    key: 'slow',
-    question: 'Does water go in slowly?',
-    answer: !joining
-      ? 'Open: no step says which phase goes into which, such as B into A.'
-      : minutes
-        ? `Yes, over ${minutes} min in step ${joining.number}.`
-        : `Open: step ${joining.number} has no minutes.`,
-    isOpen: !minutes,
-    reason: 'Faster than oil can wrap it, the emulsion inverts.',
-  }
-}
-
-function shearCheck(steps: readonly Step[], joining: { step: Step; number: number } | null): FormulaCheck {
-  const from = joining ? joining.number - 1 : steps.length
-  const fastest = steps
-    .map((step, index) => ({ rpm: step.speedRpm, number: index + 1 }))
-    .slice(from)
-    .filter((step): step is { rpm: number; number: number } => step.rpm !== null)
-    .sort((a, b) => b.rpm - a.rpm)[0]
-  const isFast = fastest !== undefined && fastest.rpm > gentleRpm
-  return {
-    key: 'shear',
-    question: 'Is the shear one that it can bear?',
-    answer: !joining
-      ? 'Open: no step says which phase goes into which.'
-      : !fastest
-        ? `Open: step ${joining.number} has no speed.`
-        : isFast
-          ? `Open: ${fastest.rpm} rpm in step ${fastest.number}; has a batch borne it?`
-          : `Yes, at most ${fastest.rpm} rpm from step ${joining.number} on.`,
-    isOpen: !fastest || isFast,
-    reason: 'Packed drops cannot slip past; fast blades tear.',
-  }
-}
-
-function coldCheck(joining: { step: Step; number: number } | null): FormulaCheck {
-  const at = joining?.step.temperatureC ?? null
-  return {
-    key: 'cold',
-    question: 'Is it cold enough?',
-    answer: !joining
-      ? 'Open: no step says which phase goes into which.'
-      : at === null
-        ? `Open: step ${joining.number} has no temperature.`
-        : at > coldC
-          ? `Open: ${at} °C in step ${joining.number}, above ${coldC} °C.`
-          : `Yes, ${at} °C; limit ${coldC} °C.`,
-    isOpen: at === null || at > coldC,
-    reason: 'Warm oil is thin, and its films drain.',
-  }
-}
-
-const share = (line: Line) => `${percentText(line.percentThousandths)} %`
-const named = (line: Line) => `${line.inciName}, ${share(line)}`

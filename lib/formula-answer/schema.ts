@@ -1,0 +1,29 @@
+import { checkKeys } from '@/lib/formula/rules/checks/check'
+import { z } from '@/lib/http/zod'
+
+export const answerKinds = ['answered', 'set aside'] as const
+
+/** A person's answer to a question that a formula's version leaves open. */
+export const formulaAnswerInput = z.object({
+  id: z.uuid(),
+  versionId: z.uuid(),
+  question: z.enum(checkKeys, 'That is no question to a formula. Load the page again.'),
+  kind: z.enum(answerKinds, 'Choose whether this answers the question or sets it aside.'),
+  note: z
+    .string('Say why in a few words.')
+    .trim()
+    .min(1, 'Say why in a few words: the next one who reads it was not there.')
+    .max(1000, 'A note has at most 1000 signs.'),
+  /** The target pH, where that is asked for. */
+  value: z
+    .number('Give the pH as a number, such as 5.5.')
+    .min(0, 'A pH is not below 0 here.')
+    .max(14, 'A pH is at most 14 here.')
+    .nullable()
+    .default(null),
+  /** What the question rested on when it was on screen; another is refused with 412. */
+  askedAbout: z.string().max(200_000),
+})
+export type FormulaAnswerInput = z.output<typeof formulaAnswerInput>
+
+export const formulaAnswersKey = (code: string) => `/api/formulas/${encodeURIComponent(code)}/answers`
