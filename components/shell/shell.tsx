@@ -5,6 +5,7 @@ import { usePathname } from 'next/navigation'
 import type { ReactNode } from 'react'
 import { Logo } from '@/components/marks/logo'
 import { SignedOutDialog } from '@/components/session/signed-out-dialog'
+import { Finder } from './finder'
 import { Navigation } from './navigation'
 import { PersonMenu, type Who } from './person-menu'
 import type { Place } from './places'
@@ -45,8 +46,11 @@ function DeskShell({ who, places, labName, day, isDemo, path, children }: Props 
             path={path}
             className="order-last -mb-[3px] w-full px-4 sm:px-10 xl:order-none xl:mr-8 xl:ml-[14px] xl:w-auto xl:flex-1 xl:px-[22px]"
           />
-          <div className="flex h-[41px] items-end border-b border-ink pb-[3px] pr-4 text-15 sm:pr-10 xl:border-0 xl:pr-0">
-            <PersonMenu who={who} />
+          <div className="flex h-[41px] items-end gap-6 border-b border-ink pr-4 text-15 sm:pr-10 xl:border-0 xl:pr-0">
+            <Finder places={places} />
+            <span className="pb-[3px]">
+              <PersonMenu who={who} />
+            </span>
           </div>
         </div>
       </header>

@@ -1,3 +1,4 @@
+import AxeBuilder from '@axe-core/playwright'
 import type { Locator, Page } from '@playwright/test'
 import { demoPassword } from '@/lib/lab/rules'
 import { codeOf, readBalance } from './bench'
@@ -89,4 +90,27 @@ test('By keyboard alone: a watch jar is read at the Bench', async ({ page }) => 
   await page.keyboard.press('Enter')
   await expect(page.getByText(/^Kept: /)).toBeVisible()
   await expect(page).not.toHaveURL(new RegExp(`${code}$`))
+})
+
+test('By keyboard alone: Control and K find a batch and a page by part of their names, axe clean', async ({
+  page,
+}) => {
+  await signInByKeyboard(page, 'liv@fernhollow.example')
+  await page.keyboard.press('Control+k')
+  const box = page.getByRole('combobox', { name: 'Part of a name or code' })
+  await expect(box).toBeFocused()
+  await page.keyboard.type('n86-')
+  const batch = page.getByRole('option', { name: /^batch N86-1/ })
+  await expect(batch).toHaveAttribute('aria-selected', 'true')
+  expect((await new AxeBuilder({ page }).analyze()).violations).toEqual([])
+  await page.keyboard.press('Enter')
+  await expect(page).toHaveURL(/\/batches\/N86-1$/)
+  await expect(box).toBeHidden()
+
+  await page.keyboard.press('Control+k')
+  await page.keyboard.type('station')
+  await expect(page.getByRole('option', { name: /^page Stations/ })).toHaveAttribute('aria-selected', 'true')
+  await page.keyboard.press('Escape')
+  await expect(box).toBeHidden()
+  await expect(page).toHaveURL(/\/batches\/N86-1$/)
 })
