@@ -30,6 +30,11 @@ async function main(): Promise<void> {
     process.exitCode = 2
     return
   }
+  if (values.keep && values.only !== undefined) {
+    process.stderr.write('simulate: --keep keeps the whole table, so it does not go with --only.\n')
+    process.exitCode = 2
+    return
+  }
   const started = performance.now()
   const chunks = chunksOf(allFigures(studies), seed).filter(
     ({ figure }) => values.only === undefined || figure.includes(values.only),
