@@ -1,4 +1,5 @@
 import { Ledger } from '@/components/ui/ledger'
+import { toleranceText } from '@/lib/protocol/rules/words'
 import type { PlannedAttribute } from '@/lib/protocol/schema'
 import { attributeOf } from '@/lib/reading/schema/attributes'
 import { viscosityFactor } from '@/lib/science/viscosity'
@@ -46,23 +47,4 @@ export function AttributeList({ attributes }: { attributes: PlannedAttribute[] }
       ]}
     />
   )
-}
-
-function toleranceText({ attribute, tolerance }: PlannedAttribute): string {
-  const { unit } = attributeOf(attribute)
-  if (tolerance.kind === 'range') {
-    const shown = (value: number) => shownValue(attribute, value)
-    const end = unit && !attributeOf(attribute).words ? ` ${unit}` : ''
-    if (tolerance.lower === undefined) return `at most ${shown(tolerance.upper!)}${end}`
-    if (tolerance.upper === undefined) return `at least ${shown(tolerance.lower)}${end}`
-    return `${shown(tolerance.lower)} to ${shown(tolerance.upper)}${end}`
-  }
-  const what =
-    tolerance.kind === 'percent' ? ' % of the initial' : `${unit ? ` ${unit}` : ''} from the initial`
-  const { below, above } = tolerance
-  if (below === above) return `within ${below}${what}`
-  return [below === undefined ? '' : `${below} below`, above === undefined ? '' : `${above} above`]
-    .filter(Boolean)
-    .join(', ')
-    .concat(what)
 }

@@ -5,17 +5,27 @@ import { heatLine } from '@/components/marks/heat'
 import { jarShapes } from '@/components/marks/jar-shapes'
 import { moveShapes } from '@/components/marks/place'
 import { StationLabel } from '@/components/ui/station-label'
-import { pullLabel, stationName, weeksOfPlan } from '@/lib/protocol/rules/plan'
+import {
+  askedAt,
+  askedWeeks,
+  pullLabel,
+  stationName,
+  variantOf,
+  weeksOfPlan,
+} from '@/lib/protocol/rules/plan'
 import type { PlannedStation, ProtocolPlan } from '@/lib/protocol/schema'
+import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
 
 type Props = {
   plan: ProtocolPlan
+  /** Only where this is read; every pull where left out. */
+  reads?: AttributeKey | undefined
   /** Present while the plan is a draft: presses put a pull in or take it out. */
   onToggle?: (station: number, week: number) => void
 }
 
 /** The plan as it will stand: each station a shelf, a jar at each of its time points. */
-export function PlanGrid({ plan, onToggle }: Props) {
+export function PlanGrid({ plan, reads, onToggle }: Props) {
   const weeks = weeksOfPlan(plan)
   if (plan.stations.length === 0) return <p className="text-soft">No station yet.</p>
   return (
@@ -46,13 +56,25 @@ export function PlanGrid({ plan, onToggle }: Props) {
                   name={station.kind === 'transport' ? 'on road' : undefined}
                   size={34}
                 />
+                {variantOf(station) ? (
+                  <span className="block text-13 font-430 text-soft">{variantOf(station)}</span>
+                ) : null}
               </th>
               {weeks.map((week) => (
                 <td key={week} className="h-[58px] p-0 text-center align-bottom" style={shelf(station)}>
-                  <Place station={station} index={index} week={week} plan={plan} onToggle={onToggle} />
+                  <Place
+                    station={station}
+                    index={index}
+                    week={week}
+                    plan={plan}
+                    reads={reads}
+                    onToggle={onToggle}
+                  />
                 </td>
               ))}
-              <td className="pl-4 align-bottom text-14 whitespace-nowrap text-soft">{jarsText(station)}</td>
+              <td className="pl-4 align-bottom text-14 whitespace-nowrap text-soft">
+                {jarsText(plan, station)}
+              </td>
             </tr>
           ))}
         </tbody>
@@ -66,26 +88,35 @@ function Place({
   index,
   week,
   plan,
+  reads,
   onToggle,
 }: {
   station: PlannedStation
   index: number
   week: number
   plan: ProtocolPlan
+  reads: AttributeKey | undefined
   onToggle?: Props['onToggle']
 }) {
   const isPulled = station.timePoints.includes(week)
-  const label = `${stationName(station, index)}, ${isPulled ? pullLabel(station, week, plan.endWeeks) : `week ${week}`}`
+  const isRead =
+    isPulled && (!reads || askedAt(plan, station, week).some(({ attribute }) => attribute === reads))
+  const label = [
+    stationName(station, index),
+    isPulled ? pullLabel(station, week, plan.endWeeks) : `week ${week}`,
+    ...(reads ? [attributeOf(reads).label] : []),
+  ].join(', ')
+  if (reads && !isPulled) return null
   const drawing = (
     <svg viewBox="-16 -36 32 37" width={32} height={37} className="mx-auto block" aria-hidden>
       {isPulled || onToggle ? (
-        <Drawn shapes={moveShapes(jarShapes({ height: 32, state: isPulled ? 'drawn' : 'planned' }), 0, 0)} />
+        <Drawn shapes={moveShapes(jarShapes({ height: 32, state: isRead ? 'drawn' : 'planned' }), 0, 0)} />
       ) : null}
     </svg>
   )
   if (!onToggle) {
     return isPulled ? (
-      <span aria-label={label} role="img" className="block">
+      <span aria-label={isRead ? label : `${label}, left out`} role="img" className="block">
         {drawing}
       </span>
     ) : null
@@ -93,7 +124,7 @@ function Place({
   return (
     <button
       type="button"
-      aria-pressed={isPulled}
+      aria-pressed={isRead}
       aria-label={label}
       className="block min-h-[44px] w-full min-w-[44px] content-end"
       onClick={() => onToggle(index, week)}
@@ -112,13 +143,8 @@ function shelf(station: PlannedStation) {
   }
 }
 
-function jarsText({
-  watchJars,
-  measuringJarsPerPull,
-  timePoints,
-  spares,
-  voice,
-  windowDays,
-}: PlannedStation): string {
-  return `${watchJars} watch, ${measuringJarsPerPull * timePoints.length} measuring, ${spares} spare; ${voice}, window ${windowDays} d`
+function jarsText(plan: ProtocolPlan, station: PlannedStation): string {
+  const { watchJars, measuringJarsPerPull, spares, voice, windowDays } = station
+  const measuring = measuringJarsPerPull * askedWeeks(plan, station, 'measuring').length
+  return `${watchJars} watch, ${measuring} measuring, ${spares} spare; ${voice}, window ${windowDays} d`
 }

@@ -12,7 +12,9 @@ import { toast } from '@/components/ui/toast'
 import { newId } from '@/lib/db/id'
 import { send } from '@/lib/http/fetcher'
 import type { ProtocolPage } from '@/lib/protocol/queries'
-import { jarsOfPlan, missingInPlan, weeksOfPlan } from '@/lib/protocol/rules/plan'
+import { missingInPlan } from '@/lib/protocol/rules/faults'
+import { priceOf } from '@/lib/protocol/rules/matrixing'
+import { jarsOfPlan, weeksOfPlan } from '@/lib/protocol/rules/plan'
 import { protocolKeys, type ProtocolPlan } from '@/lib/protocol/schema'
 import { spokenDay } from '@/lib/study/rules/calendar'
 import { capital, counted } from '@/lib/study/rules/words'
@@ -20,6 +22,8 @@ import { ApproveVersion } from './approve-version'
 import { AttributeList } from './attribute-list'
 import { PlanEditor } from './plan-editor'
 import { PlanGrid } from './plan-grid'
+import { Changes, StationWords } from './plan-words'
+import { Price } from './read-less'
 
 type Props = {
   protocol: ProtocolPage
@@ -38,6 +42,7 @@ export function ProtocolView({ protocol, number, mayWrite, mayStart, approver }:
   const newest = protocol.versions[0]!
   const studies = protocol.studies.filter((study) => study.number === shown.number)
   const missing = missingInPlan(shown.plan)
+  const before = protocol.versions.find((one) => one.number === shown.number - 1)
 
   async function begin() {
     try {
@@ -108,6 +113,7 @@ export function ProtocolView({ protocol, number, mayWrite, mayStart, approver }:
           <>
             <Section title="Stations and time points">
               <PlanGrid plan={shown.plan} />
+              <StationWords plan={shown.plan} />
             </Section>
             <Section title="Attributes">
               <AttributeList attributes={shown.plan.attributes} />
@@ -116,6 +122,16 @@ export function ProtocolView({ protocol, number, mayWrite, mayStart, approver }:
               <p>{jarWords(shown.plan)}</p>
               {shown.note ? <p className="mt-2">{shown.note}</p> : null}
             </Section>
+            {priceOf(shown.plan).length > 0 ? (
+              <Section title="Read less">
+                <Price plan={shown.plan} />
+              </Section>
+            ) : null}
+            {before ? (
+              <Section title={`Changed since version ${before.number}`}>
+                <Changes before={before.plan} after={shown.plan} />
+              </Section>
+            ) : null}
           </>
         )}
         {studies.length > 0 ? (
@@ -163,5 +179,7 @@ function jarWords(plan: ProtocolPlan): string {
     plan.restHours === 0
       ? 'A measuring jar is read at once'
       : `A measuring jar rests ${plan.restHours} h closed before it is read`
-  return `${plan.fillG} g in each jar, filled ${plan.fillHeightMm} mm high. ${capital(plan.pack || 'no pack is named')}. ${plan.initialJars} for the initial, ${plan.retains} retained. ${rest}.`
+  const outside = (plan.setAside ?? []).map(({ what, jars }) => `, ${jars} set aside for ${what}`).join('')
+  const own = plan.ownPack ? ` The product's own pack: ${plan.ownPack}.` : ''
+  return `${plan.fillG} g in each jar, filled ${plan.fillHeightMm} mm high. ${capital(plan.pack || 'no pack is named')}. ${plan.initialJars} for the initial, ${plan.retains} retained${outside}. ${rest}.${own}`
 }

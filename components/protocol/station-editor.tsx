@@ -4,12 +4,16 @@ import { Button } from '@/components/ui/button'
 import { Select } from '@/components/ui/select'
 import { stationName } from '@/lib/protocol/rules/plan'
 import type { PlannedStation } from '@/lib/protocol/schema'
-import { NumberPart } from './plan-editor'
+import type { PlanFault } from '@/lib/protocol/rules/faults'
+import { NumberPart } from './number-part'
+import { StationVariant } from './station-variant'
 
 type Props = {
   stations: PlannedStation[]
   setStation: (index: number, change: Partial<PlannedStation>) => void
   setStations: (stations: PlannedStation[]) => void
+  faults: PlanFault[]
+  fields: Record<string, string>
 }
 
 const kinds = [
@@ -35,7 +39,7 @@ const fresh: PlannedStation = {
 }
 
 /** Each station of the plan: what it keeps, what its failures mean, and its jars. */
-export function StationEditor({ stations, setStation, setStations }: Props) {
+export function StationEditor({ stations, setStation, setStations, faults, fields }: Props) {
   return (
     <div className="mt-6">
       <ul className="divide-y divide-hair border-y border-hair">
@@ -51,6 +55,8 @@ export function StationEditor({ stations, setStation, setStations }: Props) {
                   setStation(index, {
                     kind: kind as PlannedStation['kind'],
                     temperatureC: kind === 'temperature' ? (station.temperatureC ?? 25) : null,
+                    ...(kind === 'temperature' ? { cycle: undefined } : { light: undefined }),
+                    ...(kind === 'transport' ? { cycle: undefined } : {}),
                   })
                 }
                 wrap="w-[170px]"
@@ -99,6 +105,8 @@ export function StationEditor({ stations, setStation, setStations }: Props) {
               >
                 Take out
               </Button>
+              <StationVariant station={station} onChange={(change) => setStation(index, change)} />
+              <Faults index={index} faults={faults} fields={fields} />
             </li>
           )
         })}
@@ -111,5 +119,28 @@ export function StationEditor({ stations, setStation, setStations }: Props) {
         Add a station
       </Button>
     </div>
+  )
+}
+
+/** What is wrong with this station, where it is: what is not kept stands out from what is only unfinished. */
+function Faults({ index, faults, fields }: { index: number } & Pick<Props, 'faults' | 'fields'>) {
+  const path = `plan.stations.${index}.`
+  const own = faults.filter((fault) => fault.path.startsWith(path))
+  const answered = Object.entries(fields).filter(
+    ([field, sentence]) => field.startsWith(path) && !own.some((fault) => fault.sentence === sentence),
+  )
+  return (
+    <>
+      {own.map(({ sentence, keepsFrom }) => (
+        <p key={sentence} className={`w-full text-14 ${keepsFrom === 'saving' ? 'text-alarm' : 'text-soft'}`}>
+          {sentence}
+        </p>
+      ))}
+      {answered.map(([field, sentence]) => (
+        <p key={field} role="alert" className="w-full text-14 text-alarm">
+          {sentence}
+        </p>
+      ))}
+    </>
   )
 }

@@ -1,7 +1,10 @@
+'use client'
+
 import { Drawn } from '@/components/marks/drawn'
 import { jarShapes } from '@/components/marks/jar-shapes'
 import { moveShapes } from '@/components/marks/place'
 import { FigureDetails } from '@/components/ui/figure-details'
+import { setAsideJars } from '@/lib/protocol/rules/plan'
 import { grouped } from '@/lib/study/rules/words'
 import { needFacts } from './need-facts'
 import type { Need } from './start-state'
@@ -17,6 +20,7 @@ export function JarNeed({ need }: { need: Need }) {
     { name: 'measuring', count: need.measuringJars + plan.initialJars, kind: 'spare' as const },
     { name: 'spare', count: need.spares, kind: 'spare' as const },
     { name: 'retain', count: plan.retains, kind: 'retain' as const },
+    { name: 'set aside', count: setAsideJars(plan), kind: 'retain' as const },
   ].filter((group) => group.count > 0)
   const gaps = (groups.length - 1) * 12
   const pitch = Math.min(18, (width - gaps - 4) / Math.max(1, need.jars))

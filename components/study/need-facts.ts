@@ -1,4 +1,4 @@
-import { jarPlanInput } from '@/lib/protocol/rules/plan'
+import { jarPlanInput, setAsideJars } from '@/lib/protocol/rules/plan'
 import { jarPlanMethod } from '@/lib/science/methods/emulsion'
 import { exactly, factsOf, type FigureFacts } from '@/lib/science/methods/method'
 import type { Need } from './start-state'
@@ -18,7 +18,7 @@ export function needFacts(need: Need, of: 'jars' | 'grams' | 'short'): FigureFac
       measuringJars: need.measuringJars,
       spares: need.spares,
       initialJars: plan.initialJars,
-      retains: plan.retains,
+      retains: plan.retains + setAsideJars(plan),
       fillG: plan.fillG,
       lossPercent: plan.lossPercent,
       batchG: leftG,

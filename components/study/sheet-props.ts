@@ -67,7 +67,9 @@ function noteOf({ station }: SheetShelf): string {
       : null
   const mean =
     station.meanC === null || cycle ? cycle : `mean ${station.meanC.toFixed(1).replace('-', '−')} °C`
-  return [station.name.charAt(0).toLowerCase() + station.name.slice(1), mean].filter(Boolean).join(', ')
+  const ended = station.endedOn ? `ended ${spokenDay(station.endedOn, false)}` : null
+  const name = station.name.charAt(0).toLowerCase() + station.name.slice(1)
+  return [station.variant, name, mean, ended].filter(Boolean).join(', ')
 }
 
 /** A flag is planted where its reading stands. */

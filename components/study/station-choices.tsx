@@ -21,7 +21,7 @@ export function StationChoices({ offer, draft, plan, set }: Props) {
           const name = stationName(planned, position)
           const station = chosen[position]
           const fitting = fittingStations(planned, offer.stations)
-          const needed = jarsAtStation(planned) * Math.max(1, draft.batchIds.length)
+          const needed = jarsAtStation(plan, planned) * Math.max(1, draft.batchIds.length)
           const isFull = station ? freeIn(station) < needed : false
           return (
             <li

@@ -9,15 +9,24 @@ import { ErrorNote } from '@/components/ui/error-note'
 import { TextArea } from '@/components/ui/text-area'
 import { toast } from '@/components/ui/toast'
 import { send } from '@/lib/http/fetcher'
+import type { StudyStationRow } from '@/lib/study/queries/head'
 import type { ShownStudy } from '@/lib/study/queries/sheet'
 import { studyKeys } from '@/lib/study/schema'
+import { AmendDialog } from './amend-dialog'
 
 /** What a formulator does with a running study as a whole. */
-export function StudyActs({ study }: { study: ShownStudy }) {
+export function StudyActs({ study, stations }: { study: ShownStudy; stations: StudyStationRow[] }) {
   const [isEnding, setIsEnding] = useState(false)
+  const [isAmending, setIsAmending] = useState(false)
   if (study.state !== 'running') return null
   return (
     <>
+      <Button kind="link" onClick={() => setIsAmending(true)}>
+        Amend the study
+      </Button>
+      {isAmending ? (
+        <AmendDialog study={study} stations={stations} onClose={() => setIsAmending(false)} />
+      ) : null}
       <Button kind="link" onClick={() => setIsEnding(true)}>
         End the study
       </Button>

@@ -14,7 +14,7 @@ import { namedJar } from '@/lib/jar/rules'
 import type { StudyJars as Page } from '@/lib/study/queries/jars'
 import { spokenDay } from '@/lib/study/rules/calendar'
 import { degrees } from '@/lib/study/rules/finding'
-import { capital, counted, listed } from '@/lib/study/rules/words'
+import { capital, counted, listed, withVariant } from '@/lib/study/rules/words'
 import { studyKeys } from '@/lib/study/schema'
 import { StudyHeading, type StudyRights } from './study-heading'
 
@@ -79,9 +79,17 @@ function columns(onWeigh: ((jar: JarRow) => void) | null): LedgerColumn<JarRow>[
     {
       key: 'code',
       title: 'jar',
-      cell: (jar) => <span className="font-mono font-600">{nameOf(jar)}</span>,
+      cell: (jar) => (
+        <span id={jar.code} className="font-mono font-600 target:bg-ink target:px-1 target:text-onink">
+          {nameOf(jar)}
+        </span>
+      ),
     },
-    { key: 'kind', title: 'kind', cell: (jar) => kindWords[jar.kind] ?? jar.kind },
+    {
+      key: 'kind',
+      title: 'kind',
+      cell: (jar) => (jar.setAsideFor ? `for ${jar.setAsideFor}` : (kindWords[jar.kind] ?? jar.kind)),
+    },
     { key: 'batch', title: 'batch', from: 'tablet', cell: (jar) => jar.batchCode },
     { key: 'state', title: 'state', cell: (jar) => jar.state },
     {
@@ -150,6 +158,10 @@ function stationsOf(jars: JarRow[]) {
 
 function placeName(jar: JarRow): string {
   if (jar.studyStationId === null) return jar.kind === 'retain' ? 'Retains' : 'Opened at the start'
+  return withVariant(stationPlace(jar), jar.variant ?? '')
+}
+
+function stationPlace(jar: JarRow): string {
   if (jar.isFreezeThaw) return `Freeze-thaw, ${jar.stationName}`
   return jar.temperatureC === null
     ? (jar.stationName ?? '')

@@ -101,6 +101,7 @@ const things: Record<string, string> = {
   photo: 'photo',
   flag: 'flag',
   shelf_case: 'case',
+  study_amendment: 'amendment',
 }
 
 function whatOf({ tableName, operation, event }: Entry): string {

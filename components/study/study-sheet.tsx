@@ -16,7 +16,7 @@ import { SeriesDetails } from './series-details'
 import { sheetProps, stripOf } from './sheet-props'
 import { StudyActs } from './study-acts'
 import { StudyHeading, type StudyRights } from './study-heading'
-import { StudyNotices } from './study-notices'
+import { Amendments, StudyNotices } from './study-notices'
 
 type Picked = { rowId: string; weeks: number }
 
@@ -48,7 +48,9 @@ export function StudySheet({
         rights={rights}
         headline={sheet.finding.headline}
         sentence={sheet.finding.sentence}
-        acts={rights.mayWrite ? <StudyActs study={study} /> : null}
+        acts={
+          rights.mayWrite ? <StudyActs study={study} stations={shelves.map((one) => one.station)} /> : null
+        }
       />
       <StudyNotices study={study} />
       {batches.length > 1 ? (
@@ -80,6 +82,7 @@ export function StudySheet({
       {shown && shelf && selected ? (
         <Strip sheet={sheet} batchId={shown.id} shelf={shelf} weeks={selected.weeks} />
       ) : null}
+      <Amendments study={study} />
     </>
   )
 }

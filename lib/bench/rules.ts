@@ -1,3 +1,4 @@
+import { askedAt } from '@/lib/protocol/rules/plan'
 import type { PlannedAttribute, ProtocolPlan } from '@/lib/protocol/schema'
 import { attributeOf, type Attribute, type AttributeKey } from '@/lib/reading/schema/attributes'
 import { toleranceBand } from '@/lib/science/band'
@@ -47,6 +48,9 @@ export type JarOfBench = {
   asks: string
   attribute: string | null
   plan: ProtocolPlan
+  /** Of its station in the plan. */
+  position: number
+  timeWeeks: number
 }
 
 export type Values = {
@@ -57,10 +61,13 @@ export type Values = {
 }
 
 /** What the protocol asks of this jar: a watch jar stays sealed, a repeat answers one question. */
-export function plannedFor(jar: Pick<JarOfBench, 'asks' | 'attribute' | 'plan'>): PlannedAttribute[] {
+export function plannedFor(
+  jar: Pick<JarOfBench, 'asks' | 'attribute' | 'plan' | 'position' | 'timeWeeks'>,
+): PlannedAttribute[] {
   if (jar.asks === 'repeat')
     return jar.plan.attributes.filter((planned) => planned.attribute === jar.attribute)
-  return jar.plan.attributes.filter((planned) => attributeOf(planned.attribute).jar === jar.asks)
+  const kind = jar.asks === 'watch' ? 'watch' : 'measuring'
+  return askedAt(jar.plan, jar.plan.stations[jar.position], jar.timeWeeks, kind)
 }
 
 export function fieldsOf(jar: JarOfBench, values: Values): BenchField[] {

@@ -42,6 +42,18 @@ export const plannedAttribute = z.object({
 })
 export type PlannedAttribute = z.infer<typeof plannedAttribute>
 
+/** One turn of a freeze-thaw station, as the protocol asks for it; how many there are is said by the time points. */
+export const plannedCycle = z
+  .object({
+    coldC: z.number().min(-90).max(20),
+    coldHours: z.number().positive().max(168),
+    warmC: z.number().min(-20).max(60),
+    warmHours: z.number().positive().max(168),
+    isFrozenThrough: z.boolean(),
+  })
+  .refine((cycle) => cycle.coldC < cycle.warmC, 'The warm half must be warmer than the cold half.')
+export type PlannedCycle = z.infer<typeof plannedCycle>
+
 export const plannedStation = z.object({
   /** Which kind of place it needs; the study picks the lab's station that fits. */
   kind: z.enum(['temperature', 'freeze-thaw', 'transport']),
@@ -57,8 +69,22 @@ export const plannedStation = z.object({
   watchJars: z.number().int().min(0).max(5),
   measuringJarsPerPull: z.number().int().min(0).max(5),
   spares: z.number().int().min(0).max(10),
+  /** How its jars stand; upright where nothing is said, as in every plan older than the choice. */
+  orientation: z.enum(['lying', 'inverted']).optional(),
+  /** Jars in light, or beside them in foil: the control that has had the same temperature in the dark. */
+  light: z.enum(['exposed', 'in foil']).optional(),
+  /** Filled into the product's own pack instead of the plan's. */
+  isOwnPack: z.literal(true).optional(),
+  cycle: plannedCycle.optional(),
+  /** What is not read at a time point at which jars are pulled all the same. */
+  leftOut: z
+    .array(z.object({ attribute: attributeKey, week: z.number().positive() }))
+    .max(600)
+    .optional(),
 })
 export type PlannedStation = z.infer<typeof plannedStation>
+
+export const outsideTests = ['microbiology', 'preservative efficacy', 'another outside test'] as const
 
 export const protocolPlan = z.object({
   endWeeks: z.number().positive().max(520),
@@ -69,6 +95,28 @@ export const protocolPlan = z.object({
   retains: z.number().int().min(0).max(50),
   initialJars: z.number().int().min(0).max(20),
   pack: z.string().max(200),
+  /** The product's own pack, where a station has it: "airless pump, 30 mL". */
+  ownPack: z.string().trim().max(200).optional(),
+  /** Jars that go to outside laboratories, for each batch. */
+  setAside: z
+    .array(z.object({ what: z.enum(outsideTests), jars: z.number().int().min(1).max(50) }))
+    .max(outsideTests.length)
+    .refine(
+      (list) => new Set(list.map((one) => one.what)).size === list.length,
+      'An outside test stands twice.',
+    )
+    .optional(),
+  /** Attributes read at every second of the middle time points [std: ICH Q1D]. */
+  matrixing: z.object({ attributes: z.array(attributeKey).min(1).max(20) }).optional(),
+  /** Only the extremes of one factor are filled; what lies between is inferred [std: ICH Q1D]. */
+  bracketing: z
+    .object({
+      factor: z.string().trim().min(1, 'Name what differs.').max(80),
+      low: z.string().trim().min(1, 'Name the one end.').max(80),
+      high: z.string().trim().min(1, 'Name the other end.').max(80),
+      between: z.string().trim().min(1, 'Name what lies between.').max(200),
+    })
+    .optional(),
   stations: z.array(plannedStation).max(12),
   attributes: z
     .array(plannedAttribute)

@@ -1,4 +1,5 @@
 import { z } from '@/lib/http/zod'
+import { tolerance } from '@/lib/protocol/schema'
 import { attributeKey } from '@/lib/reading/schema/attributes'
 import { entryDetail } from '@/lib/reading/schema/entry'
 
@@ -60,6 +61,33 @@ export const endedStudy = z.object({
   reason: z.string().trim().min(1, 'Say why the study ends.').max(500),
 })
 
+const amending = {
+  id: z.uuid(),
+  version: z.number().int().positive(),
+  reason: z.string().trim().min(1, 'Say why the study is changed.').max(500),
+}
+
+/** What of a running study may still change, each with its reason: what was read stays as it was. */
+export const amendment = z.discriminatedUnion('kind', [
+  z.object({
+    kind: z.literal('time point'),
+    ...amending,
+    studyStationId: z.uuid(),
+    week: z.number().positive('A time point lies after the start.').max(520),
+    /** A measurement takes a spare jar of each batch; without one the watch jars alone are looked at. */
+    isMeasured: z.boolean().default(true),
+  }),
+  z.object({
+    kind: z.literal('retain'),
+    ...amending,
+    jarCode: z.string().trim().min(1, 'Type the jar’s code.').max(60),
+  }),
+  z.object({ kind: z.literal('station end'), ...amending, studyStationId: z.uuid() }),
+  z.object({ kind: z.literal('tolerance'), ...amending, attribute: attributeKey, tolerance }),
+])
+export type Amendment = z.input<typeof amendment>
+export type AmendmentOf<K extends Amendment['kind']> = Extract<z.output<typeof amendment>, { kind: K }>
+
 export const following = z.object({ isFollowing: z.boolean() })
 
 export const studyAddress = z.object({ code: z.string().max(40) })
@@ -101,6 +129,7 @@ export const studyKeys = {
     `${address(code)}/series?${new URLSearchParams({ batchId, studyStationId, attribute })}`,
   readings: (code: string) => `${address(code)}/readings`,
   jars: (code: string) => `${address(code)}/jars`,
+  amendments: (code: string) => `${address(code)}/amendments`,
   end: (code: string) => `${address(code)}/end`,
   follow: (code: string) => `${address(code)}/follow`,
 }

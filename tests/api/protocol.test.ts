@@ -108,3 +108,48 @@ async function lock(versionId: string) {
     trx.updateTable('protocolVersion').set({ state: 'locked' }).where('id', '=', versionId).execute(),
   )
 }
+
+describe('a plan that contradicts itself', () => {
+  it('is not kept: overlapping windows get their sentence at their station, and nothing changes', async () => {
+    const { code } = await create()
+    const wide = {
+      ...plan,
+      stations: plan.stations.map((one, at) => (at === 2 ? { ...one, windowDays: 5 } : one)),
+    }
+    const refused = await write(code, { version: 1, name: 'Wide', plan: wide })
+    expect(refused.status).toBe(422)
+    expect(refused.body.error.fields['plan.stations.2.windowDays']).toMatch(
+      /windows of week 1 and week 2 overlap/,
+    )
+    const made = await call(createRoute, {
+      cookie: formulator.cookie,
+      body: { id: newId(), versionId: newId(), name: 'Wide', plan: wide },
+    })
+    expect(made.status).toBe(422)
+    const { body } = await call(getRoute, { cookie: formulator.cookie, params: { code } })
+    expect(body.versions[0].plan).toEqual(plan)
+  })
+
+  it.each([
+    [
+      'a cycle colder in its warm half',
+      { cycle: { coldC: 5, coldHours: 8, warmC: -5, warmHours: 8, isFrozenThrough: true } },
+    ],
+    [
+      'hours beyond a week',
+      { cycle: { coldC: -10, coldHours: 900, warmC: 25, warmHours: 8, isFrozenThrough: true } },
+    ],
+    ['an orientation nobody knows', { orientation: 'sideways' }],
+    ['a reading left out that is no attribute', { leftOut: [{ attribute: 'taste', week: 2 }] }],
+  ])('%s is refused', async (_, change) => {
+    const { code } = await create()
+    const stations = [{ ...plan.stations[4]!, ...change }]
+    expect((await write(code, { version: 1, name: 'Odd', plan: { ...plan, stations } })).status).toBe(422)
+  })
+
+  it('an outside test that stands twice is refused', async () => {
+    const { code } = await create()
+    const setAside = [1, 2].map((jars) => ({ what: 'microbiology', jars }))
+    expect((await write(code, { version: 1, name: 'Odd', plan: { ...plan, setAside } })).status).toBe(422)
+  })
+})

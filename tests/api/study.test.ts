@@ -114,6 +114,35 @@ describe('starting a study', () => {
     expect(ofRequest.every((row) => row.actorId === formulator.actor.personId)).toBe(true)
   })
 
+  it('stands lying jars beside upright ones in one cabinet, each in a place of its own, and sets jars aside', async () => {
+    const screen = readyMadePlan('screen', 'cream')
+    const [, , warm] = screen.stations
+    const version = await makeProtocol(formulator.actor, {
+      ...screen,
+      stations: [warm!, { ...warm!, orientation: 'lying' }],
+      setAside: [{ what: 'microbiology', jars: 2 }],
+    })
+    const batchId = await batch()
+    const id = newId()
+    const body = { id, protocolVersionId: version, batchIds: [batchId], initialReadings: initialOf(batchId) }
+    expect((await start(body)).status).toBe(200)
+    const places = await t.db
+      .selectFrom('studyStation')
+      .select(['stationId', 'variant'])
+      .where('studyId', '=', id)
+      .orderBy('position')
+      .execute()
+    expect(places.map(({ variant }) => variant)).toEqual(['', 'lying'])
+    expect(places[0]!.stationId).toBe(places[1]!.stationId)
+    const jars = await t.db.selectFrom('jar').selectAll().where('studyId', '=', id).execute()
+    const standing = jars.filter((jar) => jar.studyStationId !== null)
+    expect(new Set(standing.map((jar) => `${jar.shelf} ${jar.place}`)).size).toBe(standing.length)
+    expect(jars.filter((jar) => jar.setAsideFor === 'microbiology').map((jar) => jar.state)).toEqual([
+      'kept',
+      'kept',
+    ])
+  })
+
   it('locks the version of the protocol it follows', async () => {
     const version = await makeProtocol(formulator.actor)
     const batchId = await batch()

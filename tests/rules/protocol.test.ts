@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest'
-import { jarsAtStation, jarsOfPlan, missingInPlan, pullLabel, weeksOfPlan } from '@/lib/protocol/rules/plan'
+import { missingInPlan } from '@/lib/protocol/rules/faults'
+import { jarsAtStation, jarsOfPlan, pullLabel, weeksOfPlan } from '@/lib/protocol/rules/plan'
 import {
   emulsions,
   purposes,
@@ -53,7 +54,7 @@ describe('ready-made protocols', () => {
 describe('a plan', () => {
   it('counts a jar for each watch, pull, spare, initial and retain', () => {
     const plan = readyMadePlan('screen', 'cream')
-    expect(plan.stations.map(jarsAtStation)).toEqual([11, 11, 11, 11, 7])
+    expect(plan.stations.map((station) => jarsAtStation(plan, station))).toEqual([11, 11, 11, 11, 7])
     // 51 at the stations, 1 for the initial, 2 retains; 54 × 30 g ÷ 0.97 = 1670.1 g.
     const need = jarsOfPlan(plan, 1600)
     expect(need.jars).toBe(54)

@@ -147,7 +147,7 @@ describe('conditions', () => {
 
   it('a half that stopped short is named by its cycle', () => {
     const place = { cycleLowC: -10, cycleHighC: 25 }
-    const half = { cycle: 4, half: 'cold', reachedC: -6, isFrozenThrough: null }
+    const half = { cycle: 4, half: 'cold', reachedC: -6, isFrozenThrough: null, hours: 16 }
     expect(cycleDoubts(place, [half])[0]!.sentence).toMatch(/^Cycle 4 fell short/)
     expect(cycleDoubts(place, [{ ...half, reachedC: -9 }])).toEqual([])
     expect(cycleDoubts(place, [{ ...half, half: 'warm', reachedC: 21 }])).toHaveLength(1)

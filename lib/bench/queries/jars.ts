@@ -51,6 +51,7 @@ export function jarsToRead(db: Db | Trx) {
       'ss.id as studyStationId',
       'ss.isFreezeThaw',
       'ss.voice',
+      'ss.position',
       'ss.temperatureC',
       'station.id as stationId',
       'station.name as stationName',

@@ -3,7 +3,7 @@ import type { z } from 'zod'
 import type { Actor } from '@/lib/auth/actor'
 import type { Trx } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
-import { missingInPlan } from '@/lib/protocol/rules/plan'
+import { missingInPlan } from '@/lib/protocol/rules/faults'
 import type { approvedVersion, ProtocolPlan } from '@/lib/protocol/schema'
 import { expectOne } from '@/lib/trail/queries'
 

@@ -3,7 +3,8 @@ import { sql } from 'kysely'
 import type { Actor } from '@/lib/auth/actor'
 import type { Trx } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
-import type { newProtocol, newProtocolVersion, writtenPlan } from '@/lib/protocol/schema'
+import { planFaults } from '@/lib/protocol/rules/faults'
+import type { newProtocol, newProtocolVersion, ProtocolPlan, writtenPlan } from '@/lib/protocol/schema'
 import { expectOne } from '@/lib/trail/queries'
 
 export async function createProtocol(trx: Trx, actor: Actor, input: z.output<typeof newProtocol>) {
@@ -13,6 +14,7 @@ export async function createProtocol(trx: Trx, actor: Actor, input: z.output<typ
     .where('id', '=', input.id)
     .executeTakeFirst()
   if (same) return { ...same, versionId: input.versionId }
+  refuseFaults(input.plan)
   const code = await nextCode(trx)
   await trx
     .insertInto('protocol')
@@ -83,6 +85,7 @@ export async function writePlan(
   if (draft.version !== input.version) {
     await expectOne(trx, undefined, { table: 'protocol_version', id: draft.id, thing: what })
   }
+  refuseFaults(input.plan)
   await trx
     .updateTable('protocolVersion')
     .set({ plan: JSON.stringify(input.plan), note: input.note, version: input.version + 1 })
@@ -96,6 +99,17 @@ export async function writePlan(
       .execute()
   }
   return { version: input.version + 1 }
+}
+
+/** What contradicts itself is not kept; what is only unfinished is. */
+function refuseFaults(plan: ProtocolPlan): void {
+  const faults = planFaults(plan).filter((fault) => fault.keepsFrom === 'saving')
+  const [first] = faults
+  if (!first) return
+  throw refuse.invalid(
+    first.sentence,
+    Object.fromEntries(faults.map(({ path, sentence }) => [path, sentence])),
+  )
 }
 
 async function newestVersion(trx: Trx, code: string) {

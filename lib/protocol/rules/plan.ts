@@ -1,5 +1,6 @@
 import { jarPlan, type JarPlanInput } from '@/lib/science/jar-plan'
-import type { PlannedStation, ProtocolPlan } from '@/lib/protocol/schema'
+import type { PlannedAttribute, PlannedStation, ProtocolPlan } from '@/lib/protocol/schema'
+import { attributeOf } from '@/lib/reading/schema/attributes'
 
 /** What one batch must give: jars of each kind and grams, from a plan. */
 export function jarsOfPlan(plan: ProtocolPlan, batchG: number) {
@@ -11,27 +12,67 @@ export function jarPlanInput(plan: ProtocolPlan, batchG: number): JarPlanInput {
   return {
     stations: plan.stations.map((station, index) => ({
       name: stationName(station, index),
-      timePoints: station.timePoints,
+      // A pull at which nothing is measured opens no jar.
+      timePoints: askedWeeks(plan, station, 'measuring'),
       watchJars: station.watchJars,
       measuringJarsPerPull: station.measuringJarsPerPull,
       spares: station.spares,
     })),
     initialJars: plan.initialJars,
-    retains: plan.retains,
+    retains: plan.retains + setAsideJars(plan),
     fillG: plan.fillG,
     batchG,
     lossPercent: plan.lossPercent,
   }
 }
 
-export function jarsAtStation(station: PlannedStation): number {
-  return station.watchJars + station.measuringJarsPerPull * station.timePoints.length + station.spares
+export function jarsAtStation(plan: Pick<ProtocolPlan, 'attributes'>, station: PlannedStation): number {
+  const opened = askedWeeks(plan, station, 'measuring').length
+  return station.watchJars + station.measuringJarsPerPull * opened + station.spares
+}
+
+/** Jars that each batch gives to outside laboratories. */
+export function setAsideJars(plan: Pick<ProtocolPlan, 'setAside'>): number {
+  return (plan.setAside ?? []).reduce((sum, { jars }) => sum + jars, 0)
+}
+
+/** Attributes that one kind of jar is asked for at one time point, in the plan's order. */
+export function askedAt(
+  plan: Pick<ProtocolPlan, 'attributes'>,
+  station: Pick<PlannedStation, 'leftOut'> | undefined,
+  week: number,
+  jar?: 'watch' | 'measuring',
+): PlannedAttribute[] {
+  return plan.attributes.filter(
+    ({ attribute }) =>
+      (jar === undefined || attributeOf(attribute).jar === jar) &&
+      !(station?.leftOut ?? []).some((cell) => cell.week === week && cell.attribute === attribute),
+  )
+}
+
+/** Time points at which this kind of jar has something to give. A plan without such an attribute pulls it all the same. */
+export function askedWeeks(
+  plan: Pick<ProtocolPlan, 'attributes'>,
+  station: PlannedStation,
+  jar: 'watch' | 'measuring',
+): number[] {
+  if (!plan.attributes.some(({ attribute }) => attributeOf(attribute).jar === jar)) return station.timePoints
+  return station.timePoints.filter((week) => askedAt(plan, station, week, jar).length > 0)
 }
 
 export function stationName(station: PlannedStation, index: number): string {
-  if (station.kind === 'freeze-thaw') return 'freeze-thaw'
-  if (station.kind === 'transport') return 'transport'
-  return station.temperatureC === null ? `station ${index + 1}` : `${station.temperatureC} °C`
+  const name = station.kind === 'temperature' ? temperatureName(station, index) : station.kind
+  return [name, variantOf(station)].filter(Boolean).join(', ')
+}
+
+function temperatureName({ temperatureC }: PlannedStation, index: number): string {
+  return temperatureC === null ? `station ${index + 1}` : `${temperatureC} °C`
+}
+
+/** What sets a station's jars apart from upright ones in the plan's pack; empty where nothing does. */
+export function variantOf({ light, orientation, isOwnPack }: PlannedStation): string {
+  const lit = light === 'exposed' ? 'in light' : light === 'in foil' ? 'in light, wrapped in foil' : null
+  return [lit, orientation, isOwnPack ? 'own pack' : null].filter(Boolean).join(', ')
 }
 
 /** Weeks at which anything is pulled, each once, in order. */
@@ -45,28 +86,4 @@ export function pullLabel(station: PlannedStation, timeWeeks: number, endWeeks: 
   if (station.kind === 'freeze-thaw') return `cycle ${station.timePoints.indexOf(timeWeeks) + 1}`
   if (station.kind === 'transport') return `leg ${station.timePoints.indexOf(timeWeeks) + 1}`
   return endWeeks > 52 && timeWeeks % 13 === 0 ? `month ${(timeWeeks / 13) * 3}` : `week ${timeWeeks}`
-}
-
-/** Why a study cannot start from this plan yet, as a sentence; null where it can. */
-export function missingInPlan(plan: ProtocolPlan): string | null {
-  if (plan.stations.length === 0) return 'The protocol has no station yet. Add at least one to its plan.'
-  if (plan.attributes.length === 0)
-    return 'The protocol measures nothing yet. Add at least one attribute to its plan.'
-  const idle = plan.stations.findIndex((station) => station.timePoints.length === 0)
-  if (idle !== -1) {
-    const name = stationName(plan.stations[idle]!, idle)
-    return `The protocol has no time points at ${name}. Add them to its plan.`
-  }
-  const late = plan.stations.findIndex((station) => station.timePoints.some((week) => week > plan.endWeeks))
-  if (late !== -1) {
-    const name = stationName(plan.stations[late]!, late)
-    return `A time point at ${name} lies after the study's end in week ${plan.endWeeks}. Move the end or the time point.`
-  }
-  const jarless = plan.stations.findIndex(
-    (station) => station.watchJars === 0 && station.measuringJarsPerPull === 0,
-  )
-  if (jarless !== -1) {
-    return `The protocol puts no jar at ${stationName(plan.stations[jarless]!, jarless)}. Give it a watch jar or measuring jars.`
-  }
-  return null
 }

@@ -15,6 +15,7 @@ export type CycleHalf = {
   half: string
   reachedC: number | null
   isFrozenThrough: boolean | null
+  hours: number
 }
 export type PullJar = NonNullable<Awaited<ReturnType<typeof findPullJar>>>
 
@@ -60,6 +61,7 @@ export async function findPullJar(db: Db | Trx, pullJarId: string, instrumentIds
       'ss.id as studyStationId',
       'ss.isFreezeThaw',
       'ss.temperatureC',
+      'ss.position',
       'station.name as stationName',
       'station.cycleLowC',
       'station.cycleHighC',
@@ -83,7 +85,8 @@ export async function findPullJar(db: Db | Trx, pullJarId: string, instrumentIds
           where instrument_id = i.id order by calibrated_at desc, id desc limit 1) c on true
         where i.id = any(${instrumentIds}::uuid[]))`.as('instruments'),
       sql<CycleHalf[]>`(select coalesce(jsonb_agg(jsonb_build_object('cycle', step.cycle, 'half', step.half,
-          'reachedC', step.reached_c, 'isFrozenThrough', step.is_frozen_through)), '[]')
+          'reachedC', step.reached_c, 'isFrozenThrough', step.is_frozen_through,
+          'hours', extract(epoch from step.ended_at - step.begun_at) / 3600)), '[]')
         from cycle_step step where step.study_station_id = ss.id)`.as('cycleHalves'),
     ])
     .where('pj.id', '=', pullJarId)

@@ -27,7 +27,9 @@ export function judgeEntries(
   const keys = new Set<AttributeKey>(entries.map(({ entry }) => entry.attribute))
   const units = seriesUnits(frame, keys, [])
   const station = frame.study.stations.find((one) => one.id === jar.studyStationId)!
-  const common = jar.isFreezeThaw ? cycleDoubts(jar, jar.cycleHalves) : []
+  const common = jar.isFreezeThaw
+    ? cycleDoubts(jar, jar.cycleHalves, jar.plan.stations[jar.position]?.cycle)
+    : []
   for (const key of keys) {
     const own = entries.filter(({ entry }) => entry.attribute === key)
     const unit = units.find(

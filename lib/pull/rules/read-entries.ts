@@ -18,7 +18,7 @@ export type ReadEntry = {
 
 /** Values of all fields of a jar, or one refusal that names each field that cannot be so. */
 export function readEntries(jar: PullJar, frame: Frame, entries: readonly Entry[]): ReadEntry[] {
-  const planned = plannedFor({ asks: jar.asks, attribute: jar.attribute, plan: jar.plan })
+  const planned = plannedFor(jar)
   const fields: Record<string, string> = {}
   const seen = new Set<string>()
   const read = entries.flatMap((entry, index): ReadEntry[] => {
@@ -69,7 +69,7 @@ export function missingAttributes(
   entries: readonly Entry[],
   leaveOut: readonly string[],
 ): string[] {
-  return plannedFor({ asks: jar.asks, attribute: jar.attribute, plan: jar.plan })
+  return plannedFor(jar)
     .map((planned) => planned.attribute)
     .filter((key) => !leaveOut.includes(key) && !entries.some((entry) => entry.attribute === key))
 }

@@ -106,25 +106,38 @@ export type LoggedHalf = {
   half: string
   reachedC: number | null
   isFrozenThrough: boolean | null
+  hours: number
 }
 
+/** What the protocol asks of a cycle; where it asks nothing, the station's own temperatures hold. */
+export type AskedCycle = { coldHours: number; warmHours: number; isFrozenThrough: boolean }
+
 /** A cycle cut short is a doubt on every reading after it. */
-export function cycleDoubts(place: FreezeThawPlace, halves: readonly LoggedHalf[]): EntryDoubt[] {
-  const short = halves.filter((half) => isShort(place, half))
+export function cycleDoubts(
+  place: FreezeThawPlace,
+  halves: readonly LoggedHalf[],
+  asked?: AskedCycle,
+): EntryDoubt[] {
+  const short = halves.filter((half) => isShort(place, half, asked))
   if (short.length === 0) return []
   const cycles = [...new Set(short.map((half) => half.cycle))].toSorted((a, b) => a - b)
   return [
     {
       reason: 'cycle',
-      sentence: `${cycles.length === 1 ? 'Cycle' : 'Cycles'} ${cycles.join(', ')} fell short of the station's temperatures. Say whether the jar counts as it is.`,
+      sentence: `${cycles.length === 1 ? 'Cycle' : 'Cycles'} ${cycles.join(', ')} fell short of ${asked ? 'what the protocol asks' : "the station's temperatures"}. Say whether the jar counts as it is.`,
     },
   ]
 }
 
-function isShort({ cycleLowC, cycleHighC }: FreezeThawPlace, half: LoggedHalf): boolean {
+/** Loading and unloading take their part of an hour. */
+const hoursTolerance = 1
+
+function isShort({ cycleLowC, cycleHighC }: FreezeThawPlace, half: LoggedHalf, asked?: AskedCycle): boolean {
+  const hours = half.half === 'cold' ? asked?.coldHours : asked?.warmHours
+  if (hours !== undefined && half.hours < hours - hoursTolerance) return true
   if (half.half === 'cold') {
     return (
-      half.isFrozenThrough === false ||
+      ((asked?.isFrozenThrough ?? true) && half.isFrozenThrough === false) ||
       (half.reachedC !== null && cycleLowC !== null && half.reachedC > cycleLowC + cycleToleranceC)
     )
   }

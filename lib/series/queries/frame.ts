@@ -10,6 +10,8 @@ export type FrameStation = {
   name: string
   temperatureC: number | null
   isFreezeThaw: boolean
+  /** "inverted": what sets its jars apart from upright ones beside them. */
+  variant?: string
   voice: 'decides' | 'informs' | 'supports'
 }
 export type FrameBatch = {
@@ -57,7 +59,7 @@ async function getFrameStudy(db: Db | Trx, studyId: string) {
     select s.id, s.code, s.title, s.plan, s.started_at, s.end_weeks,
       coalesce((select time_zone from lab limit 1), 'UTC') as zone, app_now() as now,
       (select coalesce(jsonb_agg(jsonb_build_object('id', ss.id, 'name', st.name, 'temperatureC', ss.temperature_c,
-          'isFreezeThaw', ss.is_freeze_thaw, 'voice', ss.voice) order by ss.position), '[]')
+          'isFreezeThaw', ss.is_freeze_thaw, 'variant', ss.variant, 'voice', ss.voice) order by ss.position), '[]')
         from study_station ss join station st on st.id = ss.station_id where ss.study_id = s.id) as stations,
       (select coalesce(jsonb_agg(jsonb_build_object('id', b.id, 'code', b.code, 'madeAt', b.made_at,
           'lines', (select coalesce(jsonb_agg(jsonb_build_object('percent', l.percent_thousandths / 1000.0,

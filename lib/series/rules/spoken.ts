@@ -1,14 +1,17 @@
 import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
-import { shownWithUnit } from '@/lib/study/rules/words'
+import { shownWithUnit, withVariant } from '@/lib/study/rules/words'
 import { sentenceOf, type SentenceContext } from '@/lib/science/sentence'
 import type { RuleFinding } from '@/lib/science/series'
 import { addDays, dayIn, spokenDay } from '@/lib/study/rules/calendar'
 import { degrees, inSentence } from '@/lib/study/rules/finding'
 import type { Frame, FrameStation } from '../queries/frame'
 
-export function stationWords(station: Pick<FrameStation, 'isFreezeThaw' | 'temperatureC' | 'name'>): string {
-  if (station.isFreezeThaw) return 'freeze-thaw'
-  return station.temperatureC === null ? station.name : degrees(station.temperatureC)
+export function stationWords(
+  station: Pick<FrameStation, 'isFreezeThaw' | 'temperatureC' | 'name' | 'variant'>,
+): string {
+  if (station.isFreezeThaw) return withVariant('freeze-thaw', station.variant)
+  const name = station.temperatureC === null ? station.name : degrees(station.temperatureC)
+  return withVariant(name, station.variant)
 }
 
 /** How the rules' sentences name a series of this study. */

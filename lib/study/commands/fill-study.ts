@@ -3,6 +3,7 @@ import type { Actor } from '@/lib/auth/actor'
 import type { Trx } from '@/lib/db/client'
 import { newId } from '@/lib/db/id'
 import { jarCodes } from '@/lib/jar/rules'
+import { variantOf } from '@/lib/protocol/rules/plan'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
 import { listTakenPlaces } from '@/lib/station/queries'
 import { freePlaces } from '@/lib/station/rules'
@@ -39,6 +40,7 @@ export async function insertStations(
         voice: plan.stations[position]!.voice,
         isFreezeThaw: plan.stations[position]!.kind === 'freeze-thaw',
         temperatureC: plan.stations[position]!.temperatureC,
+        variant: variantOf(plan.stations[position]!),
       })),
     )
     .execute()
@@ -85,13 +87,16 @@ export async function insertJars(
     trx,
     stations.map((station) => station.stationId),
   )
-  const places = stations.map((station, position) =>
-    freePlaces(
+  // Two of the study's stations may share one of the lab's: what the first takes is not free for the second.
+  const places = stations.map((station, position) => {
+    const free = freePlaces(
       station,
       taken.filter((place) => place.stationId === station.stationId),
       planned.filter((jar) => jar.position === position).length,
-    ),
-  )
+    )
+    taken.push(...free.map((place) => ({ ...place, stationId: station.stationId })))
+    return free
+  })
   const rows = planned.map((jar, index) => ({
     ...jar,
     id: newId(),
@@ -101,7 +106,7 @@ export async function insertJars(
   await trx
     .insertInto('jar')
     .values(
-      rows.map(({ id, code, batchId, position, kind, state, spot }) => ({
+      rows.map(({ id, code, batchId, position, kind, state, spot, setAsideFor }) => ({
         id,
         code,
         studyId,
@@ -111,6 +116,7 @@ export async function insertJars(
         state,
         shelf: spot?.shelf ?? null,
         place: spot?.place ?? null,
+        setAsideFor: setAsideFor ?? null,
         fillHeightMm: plan.fillHeightMm,
       })),
     )

@@ -6,6 +6,15 @@ import type { ProtocolPlan } from '@/lib/protocol/schema'
 import { phaseFraction, type PhaseLine } from '@/lib/science/phase-fraction'
 import { studiesOf } from './scope'
 
+export type StudyAmendment = {
+  number: number
+  kind: string
+  sentence: string
+  reason: string
+  madeBy: string
+  madeOn: string
+}
+
 /** A study with the day it is in the lab: what every page of it begins with. */
 export async function getStudyHead(db: Db, actor: Actor, code: string) {
   const study = await db
@@ -37,6 +46,14 @@ export async function getStudyHead(db: Db, actor: Actor, code: string) {
       'client.name as clientName',
     ])
     .select((eb) => eb.ref('study.plan').$castTo<ProtocolPlan>().as('plan'))
+    .select(
+      sql<StudyAmendment[]>`(select coalesce(jsonb_agg(jsonb_build_object('number', a.number, 'kind', a.kind,
+          'sentence', a.sentence, 'reason', a.reason, 'madeBy', p.name, 'madeOn', (a.made_at at time zone
+            coalesce((select time_zone from lab), 'UTC'))::date) order by a.number), '[]')
+        from study_amendment a join person p on p.id = a.made_by where a.study_id = study.id)`.as(
+        'amendments',
+      ),
+    )
     .select((eb) => [
       sql<string>`(app_now() at time zone coalesce((select time_zone from lab), 'UTC'))::date`.as('today'),
       eb
@@ -68,6 +85,8 @@ export async function listStudyStations(db: Db, studyId: string) {
       'studyStation.voice',
       'studyStation.isFreezeThaw',
       'studyStation.temperatureC',
+      'studyStation.variant',
+      'studyStation.endedOn',
       'station.id as stationId',
       'station.name',
       'station.kind',

@@ -22,7 +22,7 @@ export async function getSheet(db: Db, actor: Actor, code: string) {
   const study = await getStudyHead(db, actor, code)
   const stations = await listStudyStations(db, study.id)
   const batches = await listStudyBatches(db, study.id)
-  const pullJars = await listStudyPullJars(db, study.id)
+  const pullJars = withoutEnded(await listStudyPullJars(db, study.id), stations)
   const series = inPlanOrder(await listStudySeries(db, study.id), study)
   const flags = await listOpenFlags(db, study.id)
   const readings = await listCurrentReadings(db, study.id)
@@ -58,6 +58,14 @@ export async function getSheet(db: Db, actor: Actor, code: string) {
 }
 export type SheetPage = Awaited<ReturnType<typeof getSheet>>
 export type SheetShelf = SheetPage['shelves'][number]['rows'][number]
+
+/** Where a station ended early, its shelf ends: what was planned after that day is told by the amendment. */
+function withoutEnded(pullJars: PullJarRow[], stations: StudyStationRow[]): PullJarRow[] {
+  return pullJars.filter((jar) => {
+    const endedOn = stations.find((station) => station.id === jar.studyStationId)?.endedOn
+    return !endedOn || jar.state !== 'missed' || jar.dueOn <= endedOn
+  })
+}
 
 /** Attributes stand in the order in which the protocol measures them. */
 function inPlanOrder(series: SeriesRow[], { plan }: StudyHead): SeriesRow[] {
@@ -105,6 +113,7 @@ export function findingOf(page: {
       id: station.id,
       temperatureC: station.temperatureC,
       kind: station.kind,
+      variant: station.variant,
       timePoints: study.plan.stations[station.position]?.timePoints ?? [],
     })),
     series,

@@ -1,7 +1,7 @@
 import type { SeriesFinding, Standing } from '@/lib/science/series'
 import { addDays, spokenDay } from './calendar'
 import { degrees, inSentence, type Phrase } from './finding'
-import { capital, counted } from './words'
+import { capital, counted, withVariant } from './words'
 
 type Series = {
   studyStationId: string
@@ -14,7 +14,7 @@ type Series = {
   used: number | null
   finding: SeriesFinding
 }
-type Station = { id: string; kind: string; temperatureC: number | null }
+type Station = { id: string; kind: string; temperatureC: number | null; variant?: string }
 
 /** What the curves say that the sheet does not: the day on which a trend leaves its band, and how sure that is. */
 export function curvesFinding(input: {
@@ -106,7 +106,7 @@ function where(
       ? ['in ', 'freeze-thaw']
       : station?.kind === 'transport'
         ? ['on the ', 'road']
-        : ['at ', degrees(station?.temperatureC ?? null)]
+        : ['at ', withVariant(degrees(station?.temperatureC ?? null), station?.variant)]
   const batch = batches.length > 1 ? [{ text: ` in ${one.batchCode}`, isStrong: false }] : []
   return [
     { text: isFirst ? capital(before) : before, isStrong: false },

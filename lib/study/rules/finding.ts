@@ -1,12 +1,13 @@
 import { attributes, type AttributeKey } from '@/lib/reading/schema/attributes'
 import type { Standing } from '@/lib/science/series'
 import { addDays, spokenDay } from './calendar'
-import { capital, counted, listed, numberWord } from './words'
+import { capital, counted, listed, numberWord, withVariant } from './words'
 
 export type FindingStation = {
   id: string
   temperatureC: number | null
   kind: string
+  variant?: string
   timePoints: number[]
 }
 export type FindingSeries = {
@@ -167,7 +168,7 @@ function joint(index: number, count: number): string {
 function place(station: FindingStation): Phrase[] {
   if (station.kind === 'freeze-thaw') return [plain('in '), strong('freeze-thaw')]
   if (station.kind === 'transport') return [plain('on the '), strong('road')]
-  return [plain('at '), strong(degrees(station.temperatureC))]
+  return [plain('at '), strong(withVariant(degrees(station.temperatureC), station.variant))]
 }
 
 function when(input: FindingInput, station: FindingStation, since: string, weeks: number | null): Phrase[] {
@@ -204,7 +205,9 @@ function steadySentence(input: FindingInput): string {
       const cycles = station.timePoints.filter((point) => point <= latest + 0.5).length
       return `through ${counted(cycles, 'freeze-thaw cycle')}`
     }
-    return station.kind === 'transport' ? 'on the road' : `at ${degrees(station.temperatureC)}`
+    return station.kind === 'transport'
+      ? 'on the road'
+      : `at ${withVariant(degrees(station.temperatureC), station.variant)}`
   })
   return `Steady ${listed(names)}.`
 }

@@ -1,3 +1,4 @@
+import { askedWeeks } from '@/lib/protocol/rules/plan'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
 
 export type PlannedJar = {
@@ -8,14 +9,18 @@ export type PlannedJar = {
   state: 'stored' | 'spent' | 'kept'
   /** Weeks at which it is asked for: all of its station's for a watch jar, one for a measuring jar. */
   weeks: number[]
+  /** Which outside laboratory's jar it is. */
+  setAsideFor?: string
 }
 
 /** Every jar of a study: what it is for, where it stands, when it is asked for. */
 export function plannedJars(plan: ProtocolPlan, batchIds: string[]): PlannedJar[] {
   return batchIds.flatMap((batchId) => [
     ...plan.stations.flatMap((station, position) => [
-      ...times(station.watchJars, () => stored(batchId, position, 'watch', station.timePoints)),
-      ...station.timePoints.flatMap((week) =>
+      ...times(station.watchJars, () =>
+        stored(batchId, position, 'watch', askedWeeks(plan, station, 'watch')),
+      ),
+      ...askedWeeks(plan, station, 'measuring').flatMap((week) =>
         times(station.measuringJarsPerPull, () => stored(batchId, position, 'measuring', [week])),
       ),
       ...times(station.spares, () => stored(batchId, position, 'spare', [])),
@@ -26,6 +31,14 @@ export function plannedJars(plan: ProtocolPlan, batchIds: string[]): PlannedJar[
       state: 'spent',
     })),
     ...times(plan.retains, (): PlannedJar => ({ ...nowhere(batchId), kind: 'retain', state: 'kept' })),
+    ...(plan.setAside ?? []).flatMap(({ what, jars }) =>
+      times(jars, (): PlannedJar => ({
+        ...nowhere(batchId),
+        kind: 'retain',
+        state: 'kept',
+        setAsideFor: what,
+      })),
+    ),
   ])
 }
 

@@ -1,3 +1,4 @@
+import { matrixed } from '@/lib/protocol/rules/matrixing'
 import { jarsOfPlan, weeksOfPlan } from '@/lib/protocol/rules/plan'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
 import { fillFromGrams } from '@/lib/science/jar-grams'
@@ -16,7 +17,7 @@ export type FitOption = {
 /** The protocol's plan as this study follows it. */
 export function adjustedPlan(plan: ProtocolPlan, adjustments: StudyAdjustments): ProtocolPlan {
   const without = new Set(adjustments.leaveOutWeeks ?? [])
-  return {
+  const adjusted = {
     ...plan,
     fillG: adjustments.fillG ?? plan.fillG,
     retains: adjustments.leaveOutRetains ? 0 : plan.retains,
@@ -27,6 +28,8 @@ export function adjustedPlan(plan: ProtocolPlan, adjustments: StudyAdjustments):
         : station,
     ),
   }
+  // With other middle time points, others of them are left out.
+  return plan.matrixing && without.size > 0 ? matrixed(adjusted, plan.matrixing.attributes) : adjusted
 }
 
 /** What would make a study fit a batch: less in each jar, fewer early weeks, no retains. */

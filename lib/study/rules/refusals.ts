@@ -1,5 +1,6 @@
 import { refuse } from '@/lib/http/errors'
-import { jarsAtStation, jarsOfPlan, missingInPlan, stationName } from '@/lib/protocol/rules/plan'
+import { isSamePlace, missingInPlan } from '@/lib/protocol/rules/faults'
+import { jarsAtStation, jarsOfPlan, setAsideJars, stationName } from '@/lib/protocol/rules/plan'
 import type { PlannedStation, ProtocolPlan } from '@/lib/protocol/schema'
 import { jarsFromGrams } from '@/lib/science/jar-grams'
 import { waysToFit } from './plan'
@@ -37,7 +38,7 @@ export function refuseShortBatch(plan: ProtocolPlan, batch: BatchOffer): void {
       enoughFor,
       ...need,
       initialJars: plan.initialJars,
-      retains: plan.retains,
+      retains: plan.retains + setAsideJars(plan),
       options: batchG > 0 ? waysToFit(plan, batchG) : [],
     },
   )
@@ -49,28 +50,35 @@ export function refuseStations<T extends StationOffer>(
   chosen: (T | null)[],
   batchCount: number,
 ): T[] {
-  const seen = new Set<string>()
   plan.stations.forEach((planned, position) => {
     const station = chosen[position]
-    if (station) refuseChoice(planned, position, station, seen, batchCount)
+    if (station) refuseChoice(plan, planned, position, chosen, batchCount)
   })
   return plan.stations.map((planned, position) => {
     const station = chosen[position]
     if (station) return station
+    const name = stationName(planned, position)
+    if (planned.light) {
+      throw refuse.conflict(`No light station is chosen for ${name}. Choose the one whose lamps it means.`, {
+        kind: 'station',
+        position,
+      })
+    }
     throw refuse.conflict(
-      `No station of the lab can be ${stationName(planned, position)}. Ask a manager to add one, or take it out of the protocol.`,
+      `No station of the lab can be ${name}. Ask a manager to add one, or take it out of the protocol.`,
       { kind: 'station', position },
     )
   })
 }
 
 function refuseChoice(
+  plan: ProtocolPlan,
   planned: PlannedStation,
   position: number,
-  station: StationOffer,
-  seen: Set<string>,
+  chosen: (StationOffer | null)[],
   batchCount: number,
 ): void {
+  const station = chosen[position]!
   const name = stationName(planned, position)
   const detail = { kind: 'station', position }
   if (!station.isActive) {
@@ -85,20 +93,35 @@ function refuseChoice(
       detail,
     )
   }
-  if (seen.has(station.id)) {
+  refuseCycle(planned, station, detail)
+  const sharing = plan.stations.filter((_, other) => chosen[other]?.id === station.id)
+  const isTwice = plan.stations.some(
+    (other, at) => at !== position && chosen[at]?.id === station.id && isSamePlace(other, planned),
+  )
+  if (isTwice) {
     throw refuse.conflict(
       `${station.name} is chosen twice. Each station of a protocol needs its own.`,
       detail,
     )
   }
-  seen.add(station.id)
-  const needed = jarsAtStation(planned) * batchCount
+  // Upright and lying jars share their station's places.
+  const needed = sharing.reduce((sum, one) => sum + jarsAtStation(plan, one), 0) * batchCount
   if (freeIn(station) < needed) {
     throw refuse.conflict(
       `${station.name} has ${counted(freeIn(station), 'free place')}, ${needed} are needed. Choose another station, or make room there.`,
       { ...detail, free: freeIn(station), needed },
     )
   }
+}
+
+function refuseCycle({ cycle }: PlannedStation, station: StationOffer, detail: object): void {
+  const { cycleLowC = null, cycleHighC = null } = station
+  if (!cycle || (cycleLowC === cycle.coldC && cycleHighC === cycle.warmC)) return
+  const celsius = (value: number | null) => (value === null ? 'no set' : `${value} °C`).replace('-', '−')
+  throw refuse.conflict(
+    `${station.name} cycles between ${celsius(cycleLowC)} and ${celsius(cycleHighC)}, the protocol between ${celsius(cycle.coldC)} and ${celsius(cycle.warmC)}. Choose another station, or change the protocol's cycle.`,
+    detail,
+  )
 }
 
 function grams(value: number): string {

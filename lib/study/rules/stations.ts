@@ -1,3 +1,4 @@
+import { isSamePlace } from '@/lib/protocol/rules/faults'
 import type { PlannedStation } from '@/lib/protocol/schema'
 
 export type StationOffer = {
@@ -9,6 +10,8 @@ export type StationOffer = {
   shelves: number
   placesPerShelf: number
   takenPlaces: number
+  cycleLowC?: number | null
+  cycleHighC?: number | null
 }
 
 /** The lab's stations that a planned one could use: same kind, same temperature, in use. */
@@ -31,15 +34,19 @@ export function chosenStations<T extends StationOffer>(
     const choice = choices.find((c) => c.position === position)
     return choice ? (stations.find((station) => station.id === choice.stationId) ?? null) : undefined
   })
-  const used = new Set(chosen.flatMap((station) => (station ? [station.id] : [])))
-  return chosen.map((choice, position) => {
-    if (choice !== undefined) return choice
-    const best = fittingStations(planned[position]!, stations)
-      .filter((station) => !used.has(station.id))
-      .toSorted((a, b) => freeIn(b) - freeIn(a))[0]
-    if (best) used.add(best.id)
-    return best ?? null
+  const found: (T | null)[] = chosen.map((choice) => choice ?? null)
+  chosen.forEach((choice, position) => {
+    const wanted = planned[position]!
+    // A temperature does not tell which station has the lamps, so a person says it.
+    if (choice !== undefined || wanted.light) return
+    const isUsed = ({ id }: T) =>
+      found.some((other, at) => other?.id === id && at !== position && isSamePlace(planned[at]!, wanted))
+    found[position] =
+      fittingStations(wanted, stations)
+        .filter((station) => !isUsed(station))
+        .toSorted((a, b) => freeIn(b) - freeIn(a))[0] ?? null
   })
+  return found
 }
 
 export function freeIn(station: StationOffer): number {

@@ -26,6 +26,11 @@ export function capital(text: string): string {
   return text.charAt(0).toUpperCase() + text.slice(1)
 }
 
+/** "40 °C (inverted)": what sets a station's jars apart stands with its name. */
+export function withVariant(name: string, variant: string | undefined): string {
+  return variant ? `${name} (${variant})` : name
+}
+
 export function counted(count: number, one: string, many = `${one}s`): string {
   return `${numberWord(count)} ${count === 1 ? one : many}`
 }
