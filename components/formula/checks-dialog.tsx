@@ -13,7 +13,7 @@ import { newId } from '@/lib/db/id'
 import { formulaAnswersKey } from '@/lib/formula-answer/schema'
 import type { FormulaCheck } from '@/lib/formula/rules/checks'
 import { ClientError, send } from '@/lib/http/fetcher'
-import { aboutText, givenText } from './checks-words'
+import { aboutText, givenText, withUnits } from './checks-words'
 
 type Props = {
   formula: { code: string; number: number; versionId: string }
@@ -59,7 +59,7 @@ export function ChecksDialog({ formula, check, mayWrite, isDirty, onClose, onAns
       isOpen
       onClose={onClose}
       title={check.question}
-      sentence={<span className={check.isOpen ? 'font-650 text-alarm' : ''}>{check.answer}</span>}
+      sentence={<span className={check.isOpen ? 'font-650 text-alarm' : ''}>{withUnits(check.answer)}</span>}
       width={560}
       acts={
         mayAnswer ? (

@@ -13,7 +13,13 @@ export function answerText(check: FormulaCheck, most = Infinity): string {
 }
 
 function cut(text: string, most: number): string {
-  return text.length > most ? `${text.slice(0, most - 1).trimEnd()}…` : text
+  const whole = withUnits(text)
+  return whole.length > most ? `${whole.slice(0, most - 1).trimEnd()}…` : whole
+}
+
+/** A number stays on the line of its unit. */
+export function withUnits(text: string): string {
+  return text.replace(/(\d) (%|°C|rpm|min|g\/mL)/g, '$1\u00a0$2')
 }
 
 export function givenText(given: GivenAnswer): string {

@@ -3,9 +3,9 @@ import { CheckTitle } from './checks-room'
 import { aboutText, answerText } from './checks-words'
 
 /** Questions with a reason each; what neither the formula nor a person answers is open, in the alarm colour. */
-export function Checks({ checks }: { checks: FormulaCheck[] }) {
+export function Checks({ checks, className }: { checks: FormulaCheck[]; className?: string }) {
   return (
-    <ul className="flex flex-col gap-4">
+    <ul className={className ?? 'flex flex-col gap-4'}>
       {checks.map((check) => (
         <li key={check.key} className="relative break-inside-avoid pl-5">
           <svg
@@ -24,7 +24,7 @@ export function Checks({ checks }: { checks: FormulaCheck[] }) {
           <p className={`[overflow-wrap:anywhere] ${check.isOpen ? 'font-650 text-alarm' : ''}`}>
             {answerText(check)}
           </p>
-          <p className="text-14 text-soft">
+          <p className="text-14 text-soft [overflow-wrap:anywhere]">
             {check.reason} {aboutText(check)} <span className="whitespace-nowrap">[{check.mark}]</span>
           </p>
         </li>

@@ -8,7 +8,6 @@ import { innerWord } from '@/lib/formula/rules/finding'
 import { formulaTotals, type Amounts, type FormulaTotals } from '@/lib/formula/rules/totals'
 import type { EmulsionType } from '@/lib/formula/schema'
 import { FigureDetails } from '@/components/ui/figure-details'
-import { Checks } from './checks'
 import { CheckTitle } from './checks-room'
 import { answerText } from './checks-words'
 import { highInternalFacts, insideFacts } from './formula-facts'
@@ -26,20 +25,15 @@ export function InsideDrawing({ totals, amounts, before, checks, emulsionType }:
   const { internalVolumePercent: volume, internalMassPercent: mass } = totals
   if (volume === null || mass === null) {
     return (
-      <div className="min-w-0">
-        <p className="mb-6 text-15 text-soft">
-          The cut through the emulsion is drawn as soon as a line has its share and density.
-        </p>
-        <Checks checks={checks} />
-      </div>
+      <p className="min-w-0 text-15 text-soft xl:row-span-2">
+        The cut through the emulsion is drawn as soon as a line has its share and density.
+      </p>
     )
   }
-  // What the drawing can point at stands beside it; the others have no place in it.
   const pointing = checks.filter((check) => check.at !== null)
-  const others = checks.filter((check) => check.at === null)
   const was = before ? formulaTotals(before.lines).internalVolumePercent : null
   return (
-    <div className="min-w-0">
+    <div className="min-w-0 xl:row-span-2">
       <p className="mb-2 text-15">
         Inside:{' '}
         <FigureDetails
@@ -72,7 +66,7 @@ export function InsideDrawing({ totals, amounts, before, checks, emulsionType }:
           phi={volume / 100}
           inside={innerWord(emulsionType)}
           dropMicrometres={null}
-          height={Math.max(494, pointing.length * 126)}
+          height={Math.max(494, pointing.length * 142)}
           note="The size of the drops has not been measured."
           questions={pointing.map((check) => ({
             id: check.key,
@@ -84,11 +78,6 @@ export function InsideDrawing({ totals, amounts, before, checks, emulsionType }:
           }))}
         />
       </div>
-      {others.length ? (
-        <div className="mt-6 gap-8 sm:columns-2 [&_li]:mb-4 [&_ul]:block">
-          <Checks checks={others} />
-        </div>
-      ) : null}
     </div>
   )
 }

@@ -10,6 +10,7 @@ import { emptyLine } from '@/lib/formula/rules/arrange'
 import type { FormulaTotals, PhaseTotal } from '@/lib/formula/rules/totals'
 import type { TypedLine } from '@/lib/formula/rules/typed'
 import { emulsionTypes, type EmulsionType } from '@/lib/formula/schema'
+import { Checks } from './checks'
 import { InsideDrawing } from './inside-drawing'
 import { FamilyPart } from './family-part'
 import { LineSheet, type ChangeLines } from './line-sheet'
@@ -54,7 +55,7 @@ export function LinesPart({ formula, handle, isOpen, totals, phases, checks, bef
   )
   const middles = useRowMiddles(sheet, lines.map((line) => line.id).join())
   return (
-    <div className="grid grid-cols-[minmax(0,1fr)] gap-x-8 gap-y-8 xl:grid-cols-[minmax(0,1fr)_572px]">
+    <div className="grid grid-cols-[minmax(0,1fr)] gap-x-8 gap-y-8 xl:grid-cols-[minmax(0,1fr)_572px] xl:grid-rows-[auto_1fr]">
       <div className="flex">
         <ApartJar amounts={amounts} emulsionType={draft.emulsionType} middles={middles} />
         <div ref={sheet} className="min-w-0 flex-1">
@@ -98,6 +99,10 @@ export function LinesPart({ formula, handle, isOpen, totals, phases, checks, bef
         before={formula.before}
         checks={checks}
         emulsionType={draft.emulsionType}
+      />
+      <Checks
+        checks={checks.filter((check) => check.at === null || totals.internalVolumePercent === null)}
+        className="min-w-0 gap-x-8 sm:columns-2 lg:pl-[120px] xl:col-start-1 xl:row-start-2 [&>li]:mb-4"
       />
     </div>
   )

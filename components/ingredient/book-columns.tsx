@@ -80,7 +80,7 @@ function Name({ row, onOpen }: { row: BookRow; onOpen: () => void }) {
       <button
         type="button"
         onClick={onOpen}
-        className="min-h-9 text-left font-650 underline-offset-4 [overflow-wrap:anywhere] hover:underline"
+        className="min-h-11 text-left sm:min-h-0 font-650 underline-offset-4 [overflow-wrap:anywhere] hover:underline"
       >
         {row.inciName.replaceAll('/', '/\u200b')}
       </button>

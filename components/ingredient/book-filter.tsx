@@ -48,7 +48,7 @@ export function BookFilter({ query, functions }: { query: IngredientBookQuery; f
           { value: 'water', label: 'Phase: water' },
         ]}
         onPick={(phase) => go({ phase: phase as IngredientBookQuery['phase'] })}
-        wrap="w-[150px]"
+        wrap="min-w-[130px] flex-1 sm:w-[150px] sm:flex-none"
       />
       <Select
         label="Function"
@@ -60,7 +60,7 @@ export function BookFilter({ query, functions }: { query: IngredientBookQuery; f
           label: one,
         }))}
         onPick={(fn) => go({ function: fn })}
-        wrap="w-[210px]"
+        wrap="min-w-[150px] flex-1 sm:w-[210px] sm:flex-none"
       />
     </form>
   )

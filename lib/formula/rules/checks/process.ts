@@ -43,13 +43,15 @@ export function shearQuestion({ steps, joining, borne }: Asked): Question {
   const isFast = fastest !== null && fastest.rpm > limit
   return {
     key: 'shear',
-    question: 'Is the shear one that it can bear?',
+    question: 'Can it bear the shear?',
     answer: !joining
       ? 'Open: no step says which phase goes into which.'
       : !fastest
         ? `Open: step ${joining.number} has no speed.`
         : !isFast
-          ? `Yes, at most ${fastest.rpm} rpm from step ${joining.number} on${borneMost ? `; ${borneMost.code} bore ${borneMost.value}` : ''}.`
+          ? borneMost
+            ? `Yes, at most ${fastest.rpm} rpm; ${borneMost.code} bore ${borneMost.value}.`
+            : `Yes, at most ${fastest.rpm} rpm from step ${joining.number} on.`
           : borneMost
             ? `Open: ${fastest.rpm} rpm in step ${fastest.number}; the most borne is ${borneMost.value}, in ${borneMost.code}.`
             : `Open: ${fastest.rpm} rpm in step ${fastest.number}; has a batch borne it?`,
