@@ -2,7 +2,7 @@ import type { DraftEntry, Slot } from '@/components/bench/draft'
 import type { BenchField } from '@/lib/bench/rules'
 import { ImpossibleEntry, valueOf } from '@/lib/reading/rules/value'
 import { figure } from '@/lib/report/rules'
-import { bandUsed, edgeFrom } from '@/lib/science/band'
+import { bandUsed, isNearEdge } from '@/lib/science/band'
 import { percentOf } from '@/lib/science/percent'
 
 export type JarMeasures = { tareG: number | null; grossG: number | null; fillHeightMm: number | null }
@@ -55,7 +55,7 @@ function judged(field: BenchField, value: number): Verdict {
     }
   }
   const used = field.initial === null ? 0 : (bandUsed({ lower, upper }, field.initial, value) ?? 0)
-  const isEdge = used >= edgeFrom && (lower !== null || upper !== null)
+  const isEdge = isNearEdge(used) && (lower !== null || upper !== null)
   return {
     state: 'value',
     value,

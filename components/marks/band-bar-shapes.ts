@@ -1,4 +1,4 @@
-import { bandUsed, edgeFrom, isBeyondBand } from '@/lib/science/band'
+import { bandUsed, isBeyondBand, isNearEdge } from '@/lib/science/band'
 import { dotDash } from './jar-shapes'
 import type { Role, Shape } from './shape'
 import { stripes } from './texture'
@@ -103,7 +103,7 @@ function nearnessOf(value: number, input: BandBarInput): Nearness {
   const band = { lower: input.lower ?? null, upper: input.upper ?? null }
   if (isBeyondBand(band, value)) return 'beyond'
   const used = isNumber(input.initial) ? bandUsed(band, input.initial, value) : null
-  return used !== null && used >= (input.edgeFrom ?? edgeFrom) ? 'near' : 'inside'
+  return used !== null && isNearEdge(used, input.edgeFrom) ? 'near' : 'inside'
 }
 
 type Nearness = 'inside' | 'near' | 'beyond'

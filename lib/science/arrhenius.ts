@@ -29,6 +29,8 @@ export function arrhenius({ temperaturesC, rates, predictC = [] }: ArrheniusInpu
   const inverse = temperaturesC.map((t, i) => 1 / kelvin(`temperaturesC[${i}]`, t))
   if (new Set(temperaturesC).size < 3)
     throw new ScienceError('temperaturesC', 'needs at least 3 different temperatures')
+  if (new Set(inverse).size < 3)
+    throw new ScienceError('temperaturesC', 'lie too close together to tell apart in 1/T')
   const logs = rates.map(Math.log)
 
   const fit = fitLine(inverse, logs)

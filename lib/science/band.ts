@@ -1,4 +1,5 @@
 import { assertFinite, assertNotNegative, ScienceError } from './guard'
+import { asDecimal, isAbove, reaches } from './rounding'
 import type { Band, Tolerance } from './series'
 
 /**
@@ -31,8 +32,8 @@ function bandOf(tolerance: Tolerance, initial: number): Band {
   const above = distance('tolerance.above', tolerance.above)
   const unit = tolerance.kind === 'percent' ? Math.abs(initial) / 100 : 1
   return {
-    lower: below === null ? null : initial - below * unit,
-    upper: above === null ? null : initial + above * unit,
+    lower: below === null ? null : asDecimal(initial - below * unit),
+    upper: above === null ? null : asDecimal(initial + above * unit),
   }
 }
 
@@ -53,8 +54,8 @@ export function isBeyondBand(band: Band, value: number): boolean {
 }
 
 export function sideBeyond(band: Band, value: number): 'lower' | 'upper' | null {
-  if (band.lower !== null && value < band.lower) return 'lower'
-  if (band.upper !== null && value > band.upper) return 'upper'
+  if (band.lower !== null && isAbove(band.lower, value)) return 'lower'
+  if (band.upper !== null && isAbove(value, band.upper)) return 'upper'
   return null
 }
 
@@ -73,6 +74,11 @@ export function bandUsed(band: Band, initial: number, value: number): number | n
 
 /** Share of the band from which a reading is flagged though its standing holds. */
 export const edgeFrom = 0.8
+
+/** Whether a reading has come so near its edge that it is flagged though its standing holds. */
+export function isNearEdge(used: number, from = edgeFrom): boolean {
+  return reaches(used, from)
+}
 
 /** Distance from the initial to the nearer edge. */
 export function nearerEdge(band: Band, initial: number): number {

@@ -56,7 +56,8 @@ export function assessSeries(input: SeriesInput): SeriesFinding {
     latestTime: latest && latest.time,
     slope: fit && fit.slope,
     intercept: fit && fit.intercept,
-    slopeP: fit && slopePOf(fit),
+    // Points exactly on a line, of a method without scatter, leave no variation that a p could be taken from.
+    slopeP: fit && fit.sd > 0 ? slopePOf(fit) : null,
     residualSd: fit && fit.residualSd,
     ...leaving,
     points,

@@ -2,7 +2,7 @@ import { bandUsed, nearerEdge, toleranceBand } from './band'
 import { assessSeries } from './drift'
 import { assertFinite, assertNumbers } from './guard'
 import { doubtsOf } from './judge-day'
-import { mean } from './mean'
+import { mean, rangeOf } from './mean'
 import type { Evidence, RuleFinding, SeriesInput } from './series'
 import { torqueDoubt, torqueErrorPercent } from './viscosity'
 
@@ -34,7 +34,7 @@ export function doubtOnEntry(input: SeriesInput, entry: Entry): RuleFinding[] {
     time: entry.time,
     mean: mean(entry.values),
     replicates: entry.values.length,
-    range: Math.max(...entry.values) - Math.min(...entry.values),
+    range: rangeOf(entry.values),
   }
   const settled = new Set(entry.isRepeat ? ['out', 'jump'] : [])
   const found = doubtsOf(candidate, settled, earlier, band, input.repeatabilitySd).map(

@@ -1,5 +1,7 @@
 import { assertComputable, assertFinite, assertNumbers, assertPositive, assertSameLength } from './guard'
+import { kelvin } from './kelvin'
 import { mean, median } from './mean'
+import { exceeds } from './rounding'
 import { fitTrend, trendAt, type TrendPoint } from './trend'
 
 export type InstrumentDayStation = { name: string; temperatureC: number; times: number[]; values: number[] }
@@ -48,7 +50,7 @@ export function instrumentDay(input: InstrumentDayInput): InstrumentDay {
           {
             name: station.name,
             temperatureC: station.temperatureC,
-            residual: residual / input.repeatabilitySd,
+            residual: inScatter(residual, input.repeatabilitySd, `stations[${i}]`),
           },
         ]
   })
@@ -63,14 +65,17 @@ export function instrumentDay(input: InstrumentDayInput): InstrumentDay {
   }
   const middle = median(residuals.map((r) => r.residual))
   const sign = middle < 0 ? -1 : 1
-  const beyondOne = residuals.filter((r) => sign * r.residual > rule.each).length
+  const beyondOne = residuals.filter((r) => exceeds(sign * r.residual, rule.each)).length
   const coldestMean = mean(
     [...residuals]
       .sort((a, b) => a.temperatureC - b.temperatureC)
       .slice(0, 2)
       .map((r) => r.residual),
   )
-  const shift = sign * middle > rule.median && beyondOne >= leastStations && sign * coldestMean > rule.coldest
+  const shift =
+    exceeds(sign * middle, rule.median) &&
+    beyondOne >= leastStations &&
+    exceeds(sign * coldestMean, rule.coldest)
   const isBuilding = input.daysSinceMaking !== undefined && input.daysSinceMaking <= rule.buildingDays
   return assertComputable('stations', {
     shift,
@@ -84,7 +89,7 @@ export function instrumentDay(input: InstrumentDayInput): InstrumentDay {
 /** Distance of the day's mean from where the station's earlier readings lead; null where either is missing. */
 function residualAt(station: InstrumentDayStation, at: number, field: string): number | null {
   const { times, values } = station
-  assertFinite(`${field}.temperatureC`, station.temperatureC)
+  kelvin(`${field}.temperatureC`, station.temperatureC)
   assertNumbers(`${field}.times`, times, 0)
   assertNumbers(`${field}.values`, values, 0)
   assertSameLength(`${field}.times`, times, `${field}.values`, values)
@@ -96,6 +101,12 @@ function residualAt(station: InstrumentDayStation, at: number, field: string): n
   }
   if (today.length === 0 || earlier.length === 0) return null
   return mean(today) - expectedAt(earlier, at)
+}
+
+function inScatter(residual: number, repeatabilitySd: number, field: string): number {
+  const share = residual / repeatabilitySd
+  assertFinite(`${field}.values`, share)
+  return share
 }
 
 function expectedAt(earlier: readonly TrendPoint[], at: number): number {

@@ -2,6 +2,7 @@ import { isBeyondBand, sideBeyond } from './band'
 import { median } from './mean'
 import { agreementLimit, beyondOf, jumpOf, spreadOf } from './plausible'
 import type { Measurement, PullDay } from './pull-day'
+import { isFurther } from './rounding'
 import type { Band, Evidence, RuleFinding } from './series'
 import type { TrendPoint } from './trend'
 
@@ -73,7 +74,7 @@ function judgePair(
   const allowed = agreementLimit(a, b, s)
   const replicates = a.replicates + b.replicates
   const value = (a.mean * a.replicates + b.mean * b.replicates) / replicates
-  if (difference <= allowed) {
+  if (!isFurther(difference, allowed, a.mean)) {
     const side = sideBeyond(band, a.mean)
     const isOut = side !== null && side === sideBeyond(band, b.mean) && side === sideBeyond(band, value)
     return counts(day, value, replicates, isOut)

@@ -1,4 +1,5 @@
 import { bandUsed } from './band'
+import { reaches } from './rounding'
 import type { Band, ColdestStation, Evidence } from './series'
 import { fitTrend, slopePOf, trendAt, type TrendFit, type TrendPoint } from './trend'
 
@@ -70,7 +71,7 @@ function trendUsesBand(
   const usedAtEnd = bandUsed(band, initial, end)
   if (usedNow === null || usedAtEnd === null) return null
   const isSameSide = Math.sign(now - initial) === Math.sign(end - initial)
-  if (!isSameSide || usedNow < (endTime > 26 ? 0.55 : 0.5) || usedAtEnd < 0.8) return null
+  if (!isSameSide || !reaches(usedNow, endTime > 26 ? 0.55 : 0.5) || !reaches(usedAtEnd, 0.8)) return null
 
   const isOneSided = band.lower === null || band.upper === null
   const alpha = isOneSided ? 0.1 : points.length >= 11 ? 0.02 : 0.005

@@ -52,8 +52,10 @@ export function meanKineticTemperature(
   })
   const steady = 1 / (1 / warmest - Math.log1p(Math.max(-1, rate)) / scale)
   const meanC = Math.min(maxC, minC + meanAboveMin)
+  // Where the rate bends upwards over the whole record the result is never below the mean, whatever rounding says.
+  const least = scale > 2 * warmest ? meanC : minC
   return assertComputable('temperaturesC', {
-    mktC: Math.min(maxC, Math.max(meanC, steady - zeroCelsius)),
+    mktC: Math.min(maxC, Math.max(least, steady - zeroCelsius)),
     meanC,
     minC,
     maxC,

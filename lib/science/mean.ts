@@ -22,6 +22,17 @@ export function median(values: readonly number[]): number {
   return sorted.length % 2 === 1 ? upper : (sorted[half - 1]! + upper) / 2
 }
 
+/** Largest minus smallest, of however many. */
+export function rangeOf(values: readonly number[]): number {
+  let least = Infinity
+  let most = -Infinity
+  for (const value of values) {
+    if (value < least) least = value
+    if (value > most) most = value
+  }
+  return values.length === 0 ? 0 : most - least
+}
+
 /** Sample standard deviation (n − 1), centred before squaring. */
 export function sampleStandardDeviation(values: readonly number[]): number {
   assertNumbers('values', values, 2)

@@ -1,5 +1,6 @@
 import { mean } from './mean'
 import { isUsable, type PullDay } from './pull-day'
+import { isAbove } from './rounding'
 import type { RuleFinding } from './series'
 
 /**
@@ -14,7 +15,7 @@ export function onsetOf(days: readonly PullDay[], detectionLimit: number): RuleF
       jars.set(reading.jar, Math.max(jars.get(reading.jar) ?? -Infinity, mean(reading.values)))
     }
     if (jars.size === 0) continue
-    const above = [...jars.values()].filter((percent) => percent > detectionLimit)
+    const above = [...jars.values()].filter((percent) => isAbove(percent, detectionLimit))
     if (above.length >= 2 || (above.length === 1 && previous !== null)) {
       return {
         rule: 'onset',

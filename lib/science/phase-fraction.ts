@@ -1,4 +1,5 @@
 import { assertComputable, assertFinite, assertNotNegative, assertPositive, ScienceError } from './guard'
+import { asDecimal, exceeds } from './rounding'
 
 export type PhaseLine = {
   /** % w/w. */
@@ -23,7 +24,7 @@ export const highInternalPhaseAbove = 0.74
 /**
  * Internal phase by volume: φ = Σ(wᵢ/ρᵢ over internal lines) / Σ(wᵢ/ρᵢ), volumes taken as additive.
  * Droplets of mixed sizes can stay spherical above the closest packing of equal ones.
- * Percentages add up as integers of 1e-6 %, so that 100.00 is 100 exactly.
+ * Percentages add up as decimals, so that 100.00 is 100 exactly.
  */
 export function phaseFraction({ lines }: { lines: readonly PhaseLine[] }): PhaseFraction {
   if (lines.length === 0) throw new ScienceError('lines', 'needs at least one line')
@@ -44,11 +45,18 @@ export function phaseFraction({ lines }: { lines: readonly PhaseLine[] }): Phase
     totalPercent,
     internalMassPercent: (100 * internalMass) / totalPercent,
     internalVolumePercent: 100 * share,
-    highInternalPhase: share > highInternalPhaseAbove,
+    highInternalPhase: exceeds(share, highInternalPhaseAbove),
   })
 }
 
 function sumPercent(lines: readonly PhaseLine[]): number {
-  const millionth = 1e6
-  return lines.reduce((sum, line) => sum + Math.round(line.percent * millionth), 0) / millionth
+  let sum = 0
+  let lost = 0
+  for (const { percent } of lines) {
+    // Neumaier's sum keeps what an addition rounds away, and the decimal that was meant is then near enough to find.
+    const next = sum + percent
+    lost += sum >= percent ? sum - next + percent : percent - next + sum
+    sum = next
+  }
+  return asDecimal(sum + lost)
 }

@@ -1,5 +1,6 @@
 import { tQuantile } from './distributions'
 import { sideBeyond } from './band'
+import { isFurther } from './rounding'
 import type { Band, Evidence } from './series'
 import { fitTrend, trendAt, type TrendPoint } from './trend'
 
@@ -27,7 +28,7 @@ export function jumpOf(earlier: readonly TrendPoint[], candidate: Candidate, s: 
 }
 
 function jumpFrom(mean: number, expected: number, allowed: number, from: string): Evidence | null {
-  if (Math.abs(mean - expected) <= allowed) return null
+  if (!isFurther(Math.abs(mean - expected), allowed, mean)) return null
   return { mean, expected, difference: mean - expected, allowed, from }
 }
 
@@ -46,7 +47,7 @@ export function rangeFactor(replicates: number): number {
 export function spreadOf(candidate: Candidate, s: number): Evidence | null {
   if (candidate.replicates < 2 || s === 0) return null
   const allowed = rangeFactor(candidate.replicates) * s
-  return candidate.range > allowed
+  return isFurther(candidate.range, allowed, candidate.mean)
     ? { range: candidate.range, allowed, replicates: candidate.replicates }
     : null
 }

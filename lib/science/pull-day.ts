@@ -1,4 +1,4 @@
-import { mean } from './mean'
+import { mean, rangeOf } from './mean'
 import type { SeriesInput, SeriesReading } from './series'
 
 /** What one jar, or the jars of one pull together, gave: a mean and the number of values behind it. */
@@ -89,7 +89,7 @@ function measurementOf(readings: SeriesReading[]): Measurement {
   return {
     mean: mean(values),
     replicates: values.length,
-    range: values.length === 1 ? 0 : Math.max(...values) - Math.min(...values),
+    range: rangeOf(values),
     readingIds: readings.map((reading) => reading.id),
     settled: new Set(readings.flatMap((r) => r.doubts.filter((d) => d.settled).map((d) => d.reason))),
   }

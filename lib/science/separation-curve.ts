@@ -2,6 +2,7 @@ import { fUpperTail } from './distributions'
 import { assertComputable, assertNumbers, assertPositive, assertSameLength, ScienceError } from './guard'
 import { fitFirstOrderLag } from './first-order-lag'
 import { fitHinge } from './hinge'
+import { isAbove } from './rounding'
 
 export type SeparationCurveInput = { t: number[]; percent: number[]; detectPercent?: number }
 
@@ -41,7 +42,7 @@ export function separationCurve({ t, percent, detectPercent = 1 }: SeparationCur
     return assertComputable('percent', { onset: null, rate: null, plateau: null, residualSd, model: 'none' })
   }
   const line = fitHinge(x, y)
-  const curve = new Set(x).size >= 5 ? fitFirstOrderLag(x, y, line.start) : null
+  const curve = new Set(x).size >= 5 ? fitFirstOrderLag(x, y) : null
   if (curve && isBetter(curve.squares, line.squares, x.length - 3)) {
     return assertComputable('percent', {
       onset,
@@ -61,7 +62,7 @@ export function separationCurve({ t, percent, detectPercent = 1 }: SeparationCur
 }
 
 function onsetTime(x: readonly number[], y: readonly number[], limit: number): number | null {
-  const first = y.findIndex((p, i) => p > limit && (i === y.length - 1 || y[i + 1]! > limit))
+  const first = y.findIndex((p, i) => isAbove(p, limit) && (i === y.length - 1 || isAbove(y[i + 1]!, limit)))
   if (first === -1) return null
   if (first === 0) return x[0]!
   const before = Math.min(y[first - 1]!, limit)

@@ -1,4 +1,4 @@
-import { bandUsed, edgeFrom, isBeyondBand } from './band'
+import { bandUsed, isBeyondBand, isNearEdge } from './band'
 import { judgeDay, type JudgedDay } from './judge-day'
 import { leanOf, type Lean } from './lean'
 import type { PullDay } from './pull-day'
@@ -65,7 +65,7 @@ export function stepDay(walk: Walk, day: PullDay): Walk {
   const lean = leanOf(frame, counted)
   const leanSince = lean !== null && walk.lean === null ? day.time : walk.leanSince
   const used = bandUsed(band, initial, point.mean)
-  const isAtEdge = used !== null && used >= edgeFrom && !judged.isConfirmedOut
+  const isAtEdge = used !== null && isNearEdge(used) && !judged.isConfirmedOut
   const edge = isAtEdge ? edgeRule(walk.edge, point, used, band, initial) : null
   const out = judged.isConfirmedOut ? outRule(walk.out, point, day, band) : null
   point.standing = judged.isConfirmedOut

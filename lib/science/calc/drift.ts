@@ -34,12 +34,13 @@ export const driftTopic = topic({
   example: examples.drift,
   read: readSeries,
   compute: (input) => {
-    const { band, standing, used, slope, slopeP, leavesAt, leavesAtLow, leavesAtHigh, rules } =
+    const { band, standing, used, latest, slope, slopeP, leavesAt, leavesAtLow, leavesAtHigh, rules } =
       assessSeries(input)
     return {
       band,
       standing,
-      used,
+      // Where nothing but the initial counts, that is the latest mean.
+      used: latest === null ? 0 : used,
       slope,
       slopeP,
       leavesAt,
@@ -158,7 +159,10 @@ function readColdest(fields: Fields, initialTime: number) {
   const times = numbers(coldest, 'times')
   const values = replicates(coldest, 'values').map(mean)
   assertSameLength('coldest.times', times, 'coldest.values', values)
-  const kept = times.map((_, i) => i).filter((i) => times[i] !== initialTime)
+  const kept = times
+    .map((_, i) => i)
+    .filter((i) => times[i] !== initialTime)
+    .sort((a, b) => times[a]! - times[b]!)
   return { times: kept.map((i) => times[i]!), values: kept.map((i) => values[i]!) }
 }
 
