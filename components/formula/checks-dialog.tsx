@@ -64,7 +64,9 @@ export function ChecksDialog({ formula, check, mayWrite, isDirty, onClose, onAns
       acts={
         mayAnswer ? (
           <>
-            <Button onClick={onClose}>Not now</Button>
+            <Button onClick={onClose} className="self-start">
+              Not now
+            </Button>
             <Button
               kind="primary"
               busy={busy}

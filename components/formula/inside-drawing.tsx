@@ -66,7 +66,7 @@ export function InsideDrawing({ totals, amounts, before, checks, emulsionType }:
           phi={volume / 100}
           inside={innerWord(emulsionType)}
           dropMicrometres={null}
-          height={Math.max(494, pointing.length * 142)}
+          height={Math.max(494, pointing.length * 150)}
           note="The size of the drops has not been measured."
           questions={pointing.map((check) => ({
             id: check.key,
