@@ -8,6 +8,7 @@ import { batchesOf, layGround, tell, tellFinished } from './seed/finished'
 import { markFilled } from './seed/people'
 import { fillPhotos } from './seed/photos'
 import { answerFlags } from './seed/flags'
+import { answerFormulas } from './seed/answers'
 
 if (process.argv.includes('--people')) {
   for (const { name, roles, key } of demoPeople)
@@ -111,7 +112,8 @@ async function fill(open: Omit<Filling, 'people'>): Promise<void> {
   )
   console.log('photos')
   await fillPhotos(filling, apart.id)
-  console.log('flags and cases')
+  console.log('questions, flags and cases')
+  await answerFormulas(filling)
   await answerFlags(filling)
   await fillCases(filling, { finished, waiting })
   await markFilled(filling)
