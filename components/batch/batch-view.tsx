@@ -1,28 +1,40 @@
 'use client'
 
 import Link from 'next/link'
+import { useCallback, useState } from 'react'
 import useSWR from 'swr'
 import { Heading } from '@/components/ui/heading'
-import { batchFinding } from '@/lib/batch/rules'
+import { LinkButton } from '@/components/ui/link-button'
+import { batchFinding } from '@/lib/batch/rules/finding'
 import type { BatchPage } from '@/lib/batch/queries/get-batch'
 import { batchKey } from '@/lib/batch/schema'
 import { grouped } from '@/lib/formula/rules/numbers'
 import { fetcher } from '@/lib/http/fetcher'
+import { BatchTray } from './batch-tray'
+import { claimOf, PaperSwitch } from './paper-switch'
 import { RestPart } from './rest-part'
 import { StepPart } from './step-part'
+import { useBatchOutbox } from './use-batch-outbox'
 import { useBench } from './use-bench'
 import { WeighPart } from './weigh-part'
+import { withKept } from './with-kept'
+import type { BatchWork } from './work'
 
 export type BatchPart = 'weighing' | 'process' | 'rest'
 
-type Props = { code: string; part: BatchPart | null; mayWrite: boolean }
+type Props = { code: string; part: BatchPart | null; personId: string; mayWrite: boolean }
 
-export function BatchView({ code, part, mayWrite }: Props) {
-  const { data: batch, mutate } = useSWR<BatchPage>(batchKey(code), fetcher)
+export function BatchView({ code, part, personId, mayWrite }: Props) {
+  const { data, mutate } = useSWR<BatchPage>(batchKey(code), fetcher)
   const isBench = useBench()
-  if (!batch) return null
+  const onSaved = useCallback(() => mutate(), [mutate])
+  const outbox = useBatchOutbox(personId, code, onSaved)
+  const [paper, setPaper] = useState({ isOn: false, at: '' })
+  if (!data) return null
+  const batch = withKept(data, outbox.kept)
   const shown = part ?? partOf(batch)
   const finding = batchFinding(batch)
+  const work: BatchWork = { batch, personId, mayWrite, isBench, outbox, onSaved, claim: () => claimOf(paper) }
   return (
     <div data-density={isBench ? 'bench' : undefined}>
       <Heading
@@ -44,15 +56,18 @@ export function BatchView({ code, part, mayWrite }: Props) {
         sentence={finding.sentence}
         tabs={tabsOf(batch, shown)}
         tabsLabel="Parts of this batch"
+        acts={
+          <div data-screen-only className="flex flex-wrap items-end gap-x-6 gap-y-2">
+            {mayWrite && batch.state !== 'rejected' ? <PaperSwitch paper={paper} onPaper={setPaper} /> : null}
+            <LinkButton href={`/batches/${encodeURIComponent(code)}/paper`}>Paper sheet</LinkButton>
+          </div>
+        }
       />
-      <div className="mt-5">
-        {shown === 'weighing' ? (
-          <WeighPart batch={batch} isBench={isBench} mayWrite={mayWrite} onSaved={() => mutate()} />
-        ) : null}
-        {shown === 'process' ? <StepPart batch={batch} mayWrite={mayWrite} onSaved={() => mutate()} /> : null}
-        {shown === 'rest' ? (
-          <RestPart batch={batch} mayWrite={mayWrite} onSaved={() => void mutate()} />
-        ) : null}
+      <BatchTray outbox={outbox} />
+      <div className="mt-4">
+        {shown === 'weighing' ? <WeighPart work={work} /> : null}
+        {shown === 'process' ? <StepPart work={work} /> : null}
+        {shown === 'rest' ? <RestPart work={work} /> : null}
       </div>
     </div>
   )

@@ -1,9 +1,9 @@
 import { colourOf, Drawn } from '@/components/marks/drawn'
 import type { Point } from '@/components/marks/shape'
 import { dots, stripes } from '@/components/marks/texture'
-import { gramsText, toleranceGrams } from '@/lib/batch/rules'
+import { gramsText, toleranceGrams } from '@/lib/batch/rules/weighing'
 
-type Props = { targetG: number; actualG: number | null; isWater: boolean }
+type Props = { targetG: number; actualG: number | null; tolerancePercent: number; isWater: boolean }
 
 const top = 12
 const depth = 290
@@ -11,8 +11,8 @@ const left = 84
 const wide = 220
 
 /** The vessel's last grams drawn large: what is poured, the level that is allowed, and what is too much. */
-export function Beaker({ targetG, actualG, isWater }: Props) {
-  const tolerance = toleranceGrams(targetG)
+export function Beaker({ targetG, actualG, tolerancePercent, isWater }: Props) {
+  const tolerance = toleranceGrams(targetG, tolerancePercent)
   const low = Math.max(0, targetG - 6 * tolerance)
   const high = targetG + 3.2 * tolerance
   const y = (grams: number) => top + ((high - Math.min(high, Math.max(low, grams))) / (high - low)) * depth

@@ -5,7 +5,7 @@ import { Button } from '@/components/ui/button'
 import { ErrorNote } from '@/components/ui/error-note'
 import { Section } from '@/components/ui/section'
 import { TextArea } from '@/components/ui/text-area'
-import { restHours } from '@/lib/batch/rules'
+import { restHours } from '@/lib/batch/rules/rest'
 import type { BatchPage } from '@/lib/batch/queries/get-batch'
 import { useAct } from './use-act'
 

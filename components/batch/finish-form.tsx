@@ -6,9 +6,10 @@ import { ErrorNote } from '@/components/ui/error-note'
 import { Field } from '@/components/ui/field'
 import { NumberField } from '@/components/ui/number-field'
 import { Section } from '@/components/ui/section'
-import { gramsText } from '@/lib/batch/rules'
+import { gramsText } from '@/lib/batch/rules/weighing'
 import type { BatchPage } from '@/lib/batch/queries/get-batch'
 import { readDecimal } from '@/lib/formula/rules/numbers'
+import { totalGrams } from '@/lib/science/making'
 import { useAct } from './use-act'
 
 type Props = { batch: BatchPage; onSaved: () => void }
@@ -18,7 +19,7 @@ export function FinishForm({ batch, onSaved }: Props) {
   const { act, isSending, fields, refusal } = useAct(`/api/batches/${batch.code}/finish`, onSaved)
   const [typed, setTyped] = useState({ yield: '', fill: '', closure: '' })
   const set = (change: Partial<typeof typed>) => setTyped((now) => ({ ...now, ...change }))
-  const weighedG = batch.weighings.reduce((sum, line) => sum + (line.actualG ?? 0), 0)
+  const weighedG = totalGrams(batch.weighings.map((line) => line.actualG ?? 0))
   const value = (text: string) => (text.trim() ? (readDecimal(text) ?? text) : null)
   const toWeigh = batch.weighings.filter((line) => line.actualG === null).length
   const toDo = batch.steps.filter((step) => !step.doneAt).length

@@ -3,33 +3,41 @@
 import type { ReactNode } from 'react'
 import { FigureDetails } from '@/components/ui/figure-details'
 import type { BatchPage } from '@/lib/batch/queries/get-batch'
-import { gramsText } from '@/lib/batch/rules'
+import { gramsText } from '@/lib/batch/rules/weighing'
+import { totalGrams } from '@/lib/science/making'
 import { percentOf } from '@/lib/science/percent'
 import { yieldFacts } from './batch-facts'
 import { DecisionForm } from './decision-form'
+import { FillPart } from './fill-part'
 import { FinishForm } from './finish-form'
+import { ReadingsPart } from './readings-part'
+import { RestClock } from './rest-clock'
 import { TypeTestForm } from './type-test-form'
+import type { BatchWork } from './work'
 
-type Props = { batch: BatchPage; mayWrite: boolean; onSaved: () => void }
-
-/** After making: yield, rest, emulsion type, decision. */
-export function RestPart({ batch, mayWrite, onSaved }: Props) {
+/** After making: yield, fill, rest, emulsion type, initial readings, decision. */
+export function RestPart({ work }: { work: BatchWork }) {
+  const { batch, mayWrite } = work
+  const onSaved = () => void work.onSaved()
   return (
     <div className="flex flex-col gap-9">
       <Facts batch={batch} />
       {mayWrite && batch.state === 'making' ? <FinishForm batch={batch} onSaved={onSaved} /> : null}
+      {batch.state === 'resting' ? <RestClock restedHours={batch.restedHours ?? 0} /> : null}
       {mayWrite && batch.state === 'resting' ? (
         <TypeTestForm key={batch.version} batch={batch} onSaved={onSaved} />
       ) : null}
+      <ReadingsPart work={work} moment="initial" />
       {mayWrite && (batch.state === 'resting' || batch.state === 'making') ? (
         <DecisionForm batch={batch} onSaved={onSaved} />
       ) : null}
+      <FillPart work={work} />
     </div>
   )
 }
 
 function Facts({ batch }: { batch: BatchPage }) {
-  const weighedG = batch.weighings.reduce((sum, line) => sum + (line.actualG ?? 0), 0)
+  const weighedG = totalGrams(batch.weighings.map((line) => line.actualG ?? 0))
   const facts: [string, ReactNode][] = []
   if (batch.yieldG !== null) {
     const { yieldG } = batch
@@ -42,7 +50,7 @@ function Facts({ batch }: { batch: BatchPage }) {
             figure={`${percentOf(yieldG, weighedG).toFixed(1)} %`}
             facts={() => yieldFacts(yieldG, weighedG)}
           />{' '}
-          of what went in
+          of what went in, {percentOf(yieldG, batch.sizeG).toFixed(1)} % of the size
         </>
       ) : (
         `${gramsText(yieldG)} g`

@@ -1,85 +1,109 @@
 'use client'
 
-import { useState, type FormEvent } from 'react'
+import { useRef, useState, type FormEvent } from 'react'
 import { Button } from '@/components/ui/button'
 import { ErrorNote } from '@/components/ui/error-note'
 import { Field } from '@/components/ui/field'
 import { NumberField } from '@/components/ui/number-field'
 import type { BatchPage } from '@/lib/batch/queries/get-batch'
+import { deviations, stepTimes } from '@/lib/batch/rules/steps'
+import { newId } from '@/lib/db/id'
 import { readDecimal } from '@/lib/formula/rules/numbers'
-import { ClientError, send } from '@/lib/http/fetcher'
+import { dayAndHour } from './balance-choice'
+import { useEntry } from './use-entry'
+import { useKeptDraft } from './use-kept-draft'
+import type { BatchWork } from './work'
 
-type Props = { code: string; step: BatchPage['steps'][number]; number: number; onSaved: () => void }
+type Props = {
+  work: BatchWork
+  step: BatchPage['steps'][number]
+  number: number
+  onDone: () => void
+}
 
 /** What was really done; the prescribed values stand as hints and are never filled in by themselves. */
-export function StepForm({ code, step, number, onSaved }: Props) {
-  const [typed, setTyped] = useState(() => ({
-    speed: textOf(step.actualSpeedRpm),
-    minutes: textOf(step.actualMinutes),
-    temperature: textOf(step.actualTemperatureC),
-    note: step.note,
-    reason: '',
-  }))
-  const [refusal, setRefusal] = useState<ClientError | null>(null)
-  const [isSending, setIsSending] = useState(false)
-  const set = (change: Partial<typeof typed>) => setTyped((now) => ({ ...now, ...change }))
+export function StepForm({ work, step, number, onDone }: Props) {
+  const { keep, isSending, fields, refusal } = useEntry(work)
+  const [id] = useState(newId)
+  const noteField = useRef<HTMLInputElement>(null)
+  const [typed, set, forget] = useKeptDraft(`${work.personId}.${step.id}`, {
+    ...{ speed: textOf(step.actualSpeedRpm), minutes: textOf(step.actualMinutes) },
+    ...{ temperature: textOf(step.actualTemperatureC), note: step.note, reason: '' },
+  })
+  const times = stepTimes(step.entries)
+  const isRunning = times.startedAt !== null && times.endedAt === null
+  // The presses measured it, so an empty field takes their minutes.
+  const minutes = typed.minutes || (times.minutes === null ? '' : String(times.minutes))
+  const values = {
+    actualSpeedRpm: valueOf(typed.speed),
+    actualMinutes: valueOf(minutes),
+    actualTemperatureC: valueOf(typed.temperature),
+  }
+  const numbers = {
+    actualSpeedRpm: readDecimal(typed.speed),
+    actualMinutes: readDecimal(minutes),
+    actualTemperatureC: readDecimal(typed.temperature),
+  }
+  const otherwise = deviations(step, numbers)
+
+  const base = { id, stepId: step.id, version: step.version }
+  const press = (kind: 'start' | 'end') =>
+    keep({ id, kind: 'steps', name: `Step ${number}, ${kind}`, body: { ...base, kind } })
 
   async function save(event: FormEvent) {
     event.preventDefault()
-    setRefusal(null)
-    setIsSending(true)
-    try {
-      await send(`/api/batches/${encodeURIComponent(code)}/steps`, 'PUT', {
-        stepId: step.id,
-        version: step.version,
-        actualSpeedRpm: valueOf(typed.speed),
-        actualMinutes: valueOf(typed.minutes),
-        actualTemperatureC: valueOf(typed.temperature),
-        note: typed.note,
-        reason: typed.reason,
-      })
-      onSaved()
-    } catch (thrown) {
-      if (!(thrown instanceof ClientError)) throw thrown
-      setRefusal(thrown)
-    } finally {
-      setIsSending(false)
-    }
+    if (otherwise.length && !typed.note.trim()) noteField.current?.focus()
+    const body = { ...base, kind: 'done', ...values, note: typed.note, reason: typed.reason }
+    if (!(await keep({ id, kind: 'steps', name: `Step ${number}`, body }))) return
+    forget()
+    onDone()
   }
 
   const asked = (value: number | null, unit: string) =>
     value === null ? undefined : `asked: ${value} ${unit}`
-  const field = (name: string) => refusal?.fields[name]
   return (
     <form onSubmit={(event) => void save(event)} noValidate className="grid grid-cols-2 gap-4 sm:grid-cols-3">
+      {step.doneAt ? null : (
+        <div className="col-span-full flex flex-wrap items-center gap-4">
+          <Button busy={isSending} onClick={() => void press(isRunning ? 'end' : 'start')}>
+            {isRunning ? `End step ${number}` : `Begin step ${number}`}
+          </Button>
+          <p role="status" className="text-17">
+            {times.startedAt ? `Begun ${dayAndHour(times.startedAt)}` : ''}
+            {times.endedAt ? `, ended ${dayAndHour(times.endedAt)}` : isRunning ? ', running' : ''}
+          </p>
+        </div>
+      )}
       <NumberField
         label="Speed"
         unit="rpm"
         value={typed.speed}
         hint={asked(step.speedRpm, 'rpm')}
-        error={field('actualSpeedRpm')}
+        error={fields['actualSpeedRpm']}
         onText={(speed) => set({ speed })}
       />
       <NumberField
         label="Time"
         unit="min"
-        value={typed.minutes}
+        value={minutes}
         hint={asked(step.minutes, 'min')}
-        error={field('actualMinutes')}
-        onText={(minutes) => set({ minutes })}
+        error={fields['actualMinutes']}
+        onText={(text) => set({ minutes: text })}
       />
       <NumberField
         label="Temperature"
         unit="°C"
         value={typed.temperature}
         hint={asked(step.temperatureC, '°C')}
-        error={field('actualTemperatureC')}
+        error={fields['actualTemperatureC']}
         onText={(temperature) => set({ temperature })}
       />
       <Field
-        label="Note"
+        ref={noteField}
+        label={otherwise.length ? 'Why it was done otherwise' : 'Note'}
         value={typed.note}
-        error={field('note')}
+        error={fields['note']}
+        hint={otherwise.length ? `${otherwise.join(', ')}.` : undefined}
         onText={(note) => set({ note })}
         wrap="col-span-full"
       />
@@ -87,16 +111,14 @@ export function StepForm({ code, step, number, onSaved }: Props) {
         <Field
           label="Why the step is corrected"
           value={typed.reason}
-          error={field('reason')}
+          error={fields['reason']}
           hint="What stood before stays on record."
           onText={(reason) => set({ reason })}
           wrap="col-span-full"
         />
       ) : null}
       <div className="col-span-full flex flex-col gap-3">
-        <ErrorNote
-          error={refusal && (refusal.status !== 422 || !Object.keys(refusal.fields).length) ? refusal : null}
-        />
+        <ErrorNote error={refusal} />
         <div>
           <Button type="submit" kind="primary" busy={isSending}>
             {step.doneAt ? `Correct step ${number}` : `Step ${number} is done`}

@@ -2,13 +2,14 @@
 
 import { useState } from 'react'
 import { FigureDetails } from '@/components/ui/figure-details'
-import { gramsText, percentOffText, weighed } from '@/lib/batch/rules'
+import { gramsIn, gramsText, percentOffText, weighed } from '@/lib/batch/rules/weighing'
 import type { BatchPage } from '@/lib/batch/queries/get-batch'
 import { weighingFacts } from './batch-facts'
 
 type Line = BatchPage['weighings'][number]
 type Props = {
   lines: Line[]
+  tolerancePercent: number
   current: string | null
   isOpen: boolean
   isBench: boolean
@@ -16,7 +17,7 @@ type Props = {
 }
 
 /** The sheet in order: what was weighed with its difference, the one in hand, what is still to weigh. */
-export function WeighList({ lines, current, isOpen, isBench, onPick }: Props) {
+export function WeighList({ lines, tolerancePercent, current, isOpen, isBench, onPick }: Props) {
   const [isWhole, setIsWhole] = useState(false)
   const at = lines.findIndex((line) => line.id === current)
   // At the Bench the number in hand must stay on the screen, so only the lines about it are shown first.
@@ -32,10 +33,10 @@ export function WeighList({ lines, current, isOpen, isBench, onPick }: Props) {
             <th scope="col" className="py-1.5 text-left font-700">
               Weighed, then to weigh
             </th>
-            <th scope="col" className="text-right font-700">
+            <th scope="col" className="pr-2 text-right font-700">
               g
             </th>
-            <th scope="col" className="text-right font-430">
+            <th scope="col" className="whitespace-nowrap pl-3 pr-2 text-right font-430">
               off by
             </th>
           </tr>
@@ -45,6 +46,7 @@ export function WeighList({ lines, current, isOpen, isBench, onPick }: Props) {
             <WeighRow
               key={line.id}
               line={line}
+              tolerancePercent={tolerancePercent}
               isCurrent={line.id === current}
               isOpen={isOpen && !isWindow}
               isBench={isBench}
@@ -69,12 +71,13 @@ export function WeighList({ lines, current, isOpen, isBench, onPick }: Props) {
 
 function WeighRow({
   line,
+  tolerancePercent,
   isCurrent,
   isOpen,
   isBench,
   onPick,
 }: { line: Line; isCurrent: boolean } & Omit<Props, 'lines' | 'current'>) {
-  const verdict = line.actualG === null ? null : weighed(line.targetG, line.actualG)
+  const verdict = line.actualG === null ? null : weighed(line.targetG, line.actualG, tolerancePercent)
   return (
     <tr
       aria-current={isCurrent ? 'true' : undefined}
@@ -99,7 +102,7 @@ function WeighRow({
         {verdict ? (
           <b>{gramsText(line.actualG ?? 0)}</b>
         ) : (
-          `${isCurrent ? 'of ' : ''}${gramsText(line.targetG)}`
+          `${line.portions.length ? `${gramsText(gramsIn(line.portions))} of ` : isCurrent ? 'of ' : ''}${gramsText(line.targetG)}`
         )}
       </td>
       <td
@@ -108,7 +111,7 @@ function WeighRow({
         {verdict && line.actualG !== null && !isBench ? (
           <FigureDetails
             figure={percentOffText(verdict.differencePercent)}
-            facts={() => weighingFacts(line, line.actualG ?? 0)}
+            facts={() => weighingFacts(line, line.actualG ?? 0, tolerancePercent)}
           />
         ) : verdict ? (
           percentOffText(verdict.differencePercent)
@@ -124,7 +127,8 @@ function Name({ line }: { line: Line }) {
   const detail = [
     line.lot ? `lot ${line.lot}` : '',
     line.balance ? `balance ${line.balance}` : '',
-    line.weighedBy ? `by ${line.weighedBy}` : '',
+    line.actualG !== null && line.weighedBy ? `by ${line.weighedBy}` : '',
+    line.portions.length > 1 ? `${line.portions.length} weighings` : '',
     line.note,
   ]
     .filter(Boolean)

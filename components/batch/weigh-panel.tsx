@@ -5,76 +5,66 @@ import { useWidth } from '@/components/charts/use-width'
 import { BandBar } from '@/components/marks/band-bar'
 import { Button } from '@/components/ui/button'
 import { ErrorNote } from '@/components/ui/error-note'
-import { Field } from '@/components/ui/field'
-import { gramsText, percentOffText, toleranceGrams, tolerancePercent, weighed } from '@/lib/batch/rules'
+import { gramsText, percentOffText, toleranceGrams } from '@/lib/batch/rules/weighing'
 import type { BatchPage } from '@/lib/batch/queries/get-batch'
-import { percentText, readDecimal } from '@/lib/formula/rules/numbers'
-import { ClientError, send } from '@/lib/http/fetcher'
+import { percentText } from '@/lib/formula/rules/numbers'
+import { newId } from '@/lib/db/id'
+import type { Balance } from './balance-choice'
 import { NumberPad } from './number-pad'
+import { PortionList } from './portion-list'
+import { useEntry } from './use-entry'
+import type { Judged, WeighDraft } from './weigh-draft'
+import { WeighFields } from './weigh-fields'
+import type { BatchWork } from './work'
 
 type Line = BatchPage['weighings'][number]
 
 type Props = {
-  code: string
+  work: BatchWork
   line: Line
   next: Line | undefined
-  balance: string
-  isBench: boolean
-  weight: string
-  onWeight: (typed: string) => void
-  onBalance: (balance: string) => void
-  onKept: () => void
+  balance: Balance
+  draft: WeighDraft
+  now: Judged
+  onDraft: (change: Partial<WeighDraft>) => void
+  onKept: (isLast: boolean) => void
 }
 
 /** One line at the balance: the number in hand, how far it is, and what keeping it takes. */
-export function WeighPanel(props: Props) {
-  const { code, line, next, balance, isBench, weight, onWeight, onBalance, onKept } = props
-  const [lot, setLot] = useState(line.lot)
-  const [note, setNote] = useState(line.note)
-  const [reason, setReason] = useState('')
-  const [refusal, setRefusal] = useState<ClientError | null>(null)
-  const [isSending, setIsSending] = useState(false)
+export function WeighPanel({ work, line, next, balance, draft, now, onDraft, onKept }: Props) {
+  const { batch, isBench } = work
+  const { keep, isSending, fields, refusal } = useEntry(work)
+  const [id] = useState(newId)
+  const [pad, setPad] = useState<'weight' | 'tare'>('weight')
   const noteField = useRef<HTMLInputElement>(null)
+  const weightField = useRef<HTMLInputElement>(null)
   const [bar, barWidth] = useWidth<HTMLDivElement>(420)
-  const actualG = readDecimal(weight)
-  const verdict = actualG === null || actualG <= 0 ? null : weighed(line.targetG, actualG)
+  const { verdict } = now
   // Still pouring: hollow. Only what is too much is out.
   const isShort = verdict !== null && !verdict.isWithin && verdict.differenceG < 0
-  const isUnreadable = weight.trim() !== '' && actualG === null
-  const tolerance = toleranceGrams(line.targetG)
-  const isCorrection = line.actualG !== null
+  const problem = fields['actualTyped'] ?? now.problem?.sentence
+  const tolerance = toleranceGrams(line.targetG, batch.tolerancePercent)
+  const isCorrection = draft.supersedes !== ''
 
-  async function keep(event: FormEvent) {
-    event.preventDefault()
-    if (verdict && !verdict.isWithin && !note.trim()) noteField.current?.focus()
-    setRefusal(null)
-    setIsSending(true)
-    try {
-      const url = `/api/batches/${encodeURIComponent(code)}/weighings`
-      const body = {
-        weighingId: line.id,
-        version: line.version,
-        actualTyped: weight,
-        lot,
-        balance,
-        note,
-        reason,
-      }
-      await send(url, 'PUT', body)
-      onKept()
-    } catch (thrown) {
-      if (!(thrown instanceof ClientError)) throw thrown
-      setRefusal(thrown)
-    } finally {
-      setIsSending(false)
+  async function keepIt(isLast: boolean) {
+    if (isLast && verdict && !verdict.isWithin && !draft.note.trim()) noteField.current?.focus()
+    const body = {
+      ...{ id, weighingId: line.id, version: line.version, isLast },
+      ...{ actualTyped: draft.weight, tareTyped: draft.tare, lot: now.lot },
+      ...{ balance: balance.name, balanceId: balance.id || null },
+      ...{ note: draft.note, reason: draft.reason, supersedes: draft.supersedes || null },
     }
+    const name = `${line.inciName}, ${draft.weight} g`
+    if (await keep({ id, kind: 'weighings', name, body })) onKept(isLast)
   }
 
-  const field = (name: string) => refusal?.fields[name]
-  const isAtPlace = refusal && Object.keys(refusal.fields).length > 0 && refusal.status === 422
+  const why = draft.weight.trim() ? undefined : 'Type the weight first.'
   return (
     <form
-      onSubmit={(event) => void keep(event)}
+      onSubmit={(event: FormEvent) => {
+        event.preventDefault()
+        void keepIt(true)
+      }}
       noValidate
       className="grid gap-x-7 gap-y-5 bg-typed px-4 py-5 sm:px-7 md:grid-cols-[minmax(0,1fr)_300px] lg:grid-cols-1"
     >
@@ -89,27 +79,25 @@ export function WeighPanel(props: Props) {
         <label className="mt-1 flex items-baseline gap-3 border-b-2 border-rule focus-within:border-ink">
           <span className="sr-only">Weight of {line.inciName} in g</span>
           <input
-            value={weight}
-            onChange={(event) => onWeight(event.target.value)}
+            ref={weightField}
+            value={draft.weight}
+            onChange={(event) => onDraft({ weight: event.target.value })}
+            onFocus={() => setPad('weight')}
             inputMode={isBench ? 'none' : 'decimal'}
             autoComplete="off"
             autoFocus={!isBench}
-            aria-invalid={isUnreadable || field('actualTyped') ? true : undefined}
+            aria-invalid={problem ? true : undefined}
             aria-describedby="weight-says"
             className="w-full min-w-0 bg-transparent text-76 font-600 leading-[1.15] tracking-[-0.02em] outline-none md:text-[clamp(4.75rem,14vw,7.25rem)] lg:text-76"
           />
           <span className="text-44">g</span>
         </label>
         <div id="weight-says" className="flex flex-wrap items-baseline justify-between gap-x-4 pt-2">
-          <p className={`text-26 font-700 ${isUnreadable || field('actualTyped') ? 'text-alarm' : ''}`}>
-            {field('actualTyped') ??
-              (isUnreadable
-                ? 'Type digits, with one comma or point'
-                : verdict
-                  ? verdict.words
-                  : `${gramsText(line.targetG)} g to weigh`)}
+          <p className={`text-26 font-700 ${problem ? 'text-alarm' : ''}`}>
+            {problem ?? verdict?.words ?? `${gramsText(line.targetG - now.beforeG)} g to weigh`}
           </p>
           <p className="text-17">
+            {now.beforeG > 0 && now.totalG !== null ? `${gramsText(now.totalG)} g in all, ` : ''}
             {verdict ? `${percentOffText(verdict.differencePercent)} of ${gramsText(line.targetG)} g` : ''}
           </p>
         </div>
@@ -120,54 +108,61 @@ export function WeighPanel(props: Props) {
             lower={line.targetG - tolerance}
             upper={line.targetG + tolerance}
             initial={line.targetG}
-            last={isShort ? actualG : null}
-            now={verdict && !isShort ? actualG : null}
+            last={isShort ? now.totalG : null}
+            now={verdict && !isShort ? now.totalG : null}
             edgeFrom={2}
             title={`Allowed from ${gramsText(line.targetG - tolerance)} to ${gramsText(line.targetG + tolerance)} g`}
           />
           <p className="mt-1 text-17 text-soft">
             {gramsText(line.targetG - tolerance)} to {gramsText(line.targetG + tolerance)} g,{' '}
-            {tolerancePercent} % and never under 0.01 g
+            {batch.tolerancePercent} % and never under 0.01 g
           </p>
         </div>
-        <div className="mt-4 grid grid-cols-2 gap-3">
-          <Field label="Lot" value={lot} error={field('lot')} onText={setLot} />
-          <Field label="Balance" value={balance} error={field('balance')} onText={onBalance} />
-          {(verdict && !verdict.isWithin) || note ? (
-            <Field
-              ref={noteField}
-              label="Why it is kept so"
-              value={note}
-              error={field('note')}
-              onText={setNote}
-              wrap="col-span-2"
-            />
-          ) : null}
-          {isCorrection ? (
-            <Field
-              label="Why the weight is corrected"
-              value={reason}
-              error={field('reason')}
-              hint={`${gramsText(line.actualG ?? 0)} g stays on record.`}
-              onText={setReason}
-              wrap="col-span-2"
-            />
-          ) : null}
-        </div>
+        <WeighFields
+          {...{ draft, now, fields, isBench, noteField, onDraft }}
+          onTareFocus={() => setPad('tare')}
+          onLotScanned={() => weightField.current?.focus()}
+        />
+        <PortionList
+          line={line}
+          supersedes={draft.supersedes}
+          onCorrect={(portion) =>
+            onDraft(
+              draft.supersedes === portion.id
+                ? { supersedes: '', weight: '', tare: '', lot: null, reason: '' }
+                : {
+                    ...{ supersedes: portion.id, weight: portion.grossTyped, tare: portion.tareTyped },
+                    ...{ lot: portion.lot, note: portion.note },
+                  },
+            )
+          }
+        />
         <div className="mt-3">
-          <ErrorNote error={isAtPlace ? null : refusal} />
+          <ErrorNote error={refusal} />
         </div>
       </div>
-      <div className="flex flex-col gap-4">
-        {isBench ? <NumberPad value={weight} onText={onWeight} label={`Digits of ${line.inciName}`} /> : null}
-        <Button
-          type="submit"
-          kind={verdict?.isWithin ? 'primary' : 'secondary'}
-          busy={isSending}
-          why={verdict ? undefined : 'Type the weight first.'}
-        >
-          {verdict && !verdict.isWithin ? 'Keep, say why' : next ? 'Keep, next line' : 'Keep'}
+      <div className="flex flex-col gap-3">
+        {isBench ? (
+          <NumberPad
+            value={draft[pad]}
+            onText={(text) => onDraft({ [pad]: text })}
+            label={pad === 'weight' ? `Digits of ${line.inciName}` : 'Digits of the tare'}
+          />
+        ) : null}
+        <Button type="submit" kind={verdict?.isWithin ? 'primary' : 'secondary'} busy={isSending} why={why}>
+          {isCorrection
+            ? 'Keep the correction'
+            : verdict && !verdict.isWithin
+              ? 'Keep, say why'
+              : next
+                ? 'Keep, next line'
+                : 'Keep'}
         </Button>
+        {isCorrection || line.actualG !== null ? null : (
+          <Button busy={isSending} why={why} onClick={() => void keepIt(false)}>
+            Keep, more of it follows
+          </Button>
+        )}
         {next ? (
           <p className="mt-auto flex items-baseline justify-between gap-3 border-b-[3px] border-ink pb-1">
             <span>

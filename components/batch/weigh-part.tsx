@@ -1,27 +1,28 @@
 'use client'
 
 import { useState } from 'react'
-import type { BatchPage } from '@/lib/batch/queries/get-batch'
-import { readDecimal } from '@/lib/formula/rules/numbers'
+import { BalanceChoice, type Balance } from './balance-choice'
 import { Beaker } from './beaker'
+import { useKeptDraft } from './use-kept-draft'
+import { emptyWeighDraft, judged } from './weigh-draft'
 import { WeighList } from './weigh-list'
 import { WeighPanel } from './weigh-panel'
 import { WeighedRow } from './weighed-row'
-
-type Props = { batch: BatchPage; isBench: boolean; mayWrite: boolean; onSaved: () => Promise<unknown> }
+import type { BatchWork } from './work'
 
 /** The weighing sheet: the row of jars, the vessel, the list, and the line in hand. */
-export function WeighPart({ batch, isBench, mayWrite, onSaved }: Props) {
+export function WeighPart({ work }: { work: BatchWork }) {
+  const { batch, isBench, personId } = work
   const lines = batch.weighings
-  const isOpen = mayWrite && batch.state === 'making'
+  const isOpen = work.mayWrite && batch.state === 'making'
   const [picked, setPicked] = useState<string | null>(null)
-  const [typed, setTyped] = useState<{ id: string; text: string } | null>(null)
-  const [balance, setBalance] = useState(lines.findLast((line) => line.balance)?.balance ?? '')
+  const [balance, setBalance] = useKeptDraft<Balance>(`balance.${personId}`, { id: '', name: '' })
   const current = isOpen
     ? (lines.find((line) => line.id === picked) ?? lines.find((line) => line.actualG === null))
     : undefined
   const next = lines.find((line) => line.actualG === null && line.id !== current?.id)
-  const weight = current ? (typed?.id === current.id ? typed.text : (current.actualTyped ?? '')) : ''
+  const [draft, setDraft, forget] = useKeptDraft(`${personId}.${current?.id ?? 'none'}`, emptyWeighDraft)
+  const now = current ? judged(current, draft, batch.tolerancePercent) : null
   const isWater = (line: { isInternal: boolean }) =>
     line.isInternal === (batch.emulsionType !== 'oil-in-water')
   return (
@@ -30,20 +31,27 @@ export function WeighPart({ batch, isBench, mayWrite, onSaved }: Props) {
         <WeighedRow
           lines={lines}
           current={current?.id ?? null}
-          poured={current ? (readDecimal(weight) ?? 0) / current.targetG : 0}
+          poured={current ? (now?.totalG ?? now?.beforeG ?? 0) / current.targetG : 0}
           isWater={isWater}
         />
+        {isOpen ? <BalanceChoice batch={batch} balance={balance} onBalance={setBalance} /> : null}
       </div>
       <div className="grid gap-x-10 gap-y-4 lg:grid-cols-[minmax(0,1fr)_minmax(0,1fr)]">
-        <div className="grid gap-6 py-5 sm:grid-cols-[minmax(0,10fr)_minmax(0,12fr)]">
-          {current ? (
+        <div className="grid content-start gap-6 py-5 sm:grid-cols-[minmax(0,10fr)_minmax(0,12fr)]">
+          {current && now ? (
             <div className="hidden sm:block">
-              <Beaker targetG={current.targetG} actualG={readDecimal(weight)} isWater={isWater(current)} />
+              <Beaker
+                targetG={current.targetG}
+                actualG={now.totalG ?? (now.beforeG || null)}
+                tolerancePercent={batch.tolerancePercent}
+                isWater={isWater(current)}
+              />
             </div>
           ) : null}
           <div className={current ? '' : 'sm:col-span-2'}>
             <WeighList
               lines={lines}
+              tolerancePercent={batch.tolerancePercent}
               current={current?.id ?? null}
               isOpen={isOpen}
               isBench={isBench}
@@ -51,22 +59,20 @@ export function WeighPart({ batch, isBench, mayWrite, onSaved }: Props) {
             />
           </div>
         </div>
-        {current ? (
+        {current && now ? (
           <div className="-mx-4 sm:-mx-10 lg:mx-0 lg:py-5">
             <WeighPanel
               key={`${current.id} ${current.version}`}
-              code={batch.code}
+              work={work}
               line={current}
               next={next}
               balance={balance}
-              isBench={isBench}
-              weight={weight}
-              onWeight={(text) => setTyped({ id: current.id, text })}
-              onBalance={setBalance}
-              onKept={() => {
-                setPicked(null)
-                setTyped(null)
-                void onSaved()
+              draft={draft}
+              now={now}
+              onDraft={setDraft}
+              onKept={(isLast) => {
+                if (isLast) setPicked(null)
+                forget()
               }}
             />
           </div>

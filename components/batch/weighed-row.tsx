@@ -1,5 +1,5 @@
 import { JarGlyph } from '@/components/marks/jar-glyph'
-import { gramsText } from '@/lib/batch/rules'
+import { gramsText } from '@/lib/batch/rules/weighing'
 import type { BatchPage } from '@/lib/batch/queries/get-batch'
 
 type Line = BatchPage['weighings'][number]

@@ -20,38 +20,66 @@ const grams = (what: string) =>
 export const createBatchInput = z.object({
   id: z.uuid(),
   formulaVersionId: z.uuid(),
-  sizeG: grams('The batch size').min(
-    10,
-    'A batch is at least 10 g; less cannot be weighed to half a percent.',
-  ),
+  sizeG: grams('The batch size').min(10, 'A batch is at least 10 g; less cannot be weighed to a percent.'),
+  /** Null: the lab's own. */
+  tolerancePercent: z
+    .number('Give the tolerance in % as a number.')
+    .min(0.01, 'A tolerance is at least 0.01 %.')
+    .max(10, 'More than 10 % is no tolerance for weighing.')
+    .nullable()
+    .default(null),
   note: text(2000),
 })
 export type CreateBatchInput = z.infer<typeof createBatchInput>
 
+/** When it was really done, by the device's clock or from the paper sheet; without it, now. */
+const claim = {
+  claimedAt: z.iso
+    .datetime({ offset: true, error: 'Give the time as a date and an hour.' })
+    .nullable()
+    .default(null),
+  deviceNow: z.iso.datetime({ offset: true }).nullable().default(null),
+  isFromPaper: z.boolean().default(false),
+}
+export type Claimed = { claimedAt: string | null; deviceNow: string | null; isFromPaper: boolean }
+
+/** One portion of a line as the balance showed it. Sent again under its id it is kept once. */
 export const weighInput = z.object({
+  id: z.uuid(),
   weighingId: z.uuid(),
+  /** 1 and one more for each row that was on the screen: who did not see the last one is told. */
   version,
   /** As typed: decimal comma or point. The server reads the number and keeps both. */
   actualTyped: z.string().trim().min(1, 'Type the weight in g.').max(20, 'A weight has at most 20 signs.'),
+  tareTyped: z.string().trim().max(20, 'A tare has at most 20 signs.').default(''),
+  /** False: another portion of this line follows. */
+  isLast: z.boolean().default(true),
   lot: text(60),
   balance: text(60),
-  /** Asked for where the weight is outside its tolerance. */
+  balanceId: z.uuid().nullable().default(null),
+  /** Asked for where the line is kept outside its tolerance. */
   note: text(500),
-  /** Asked for where a weight is corrected. */
+  /** The portion that this one corrects; asks for a reason. */
+  supersedes: z.uuid().nullable().default(null),
   reason: text(500),
+  ...claim,
 })
 export type WeighInput = z.infer<typeof weighInput>
 
+export const stepActs = ['start', 'end', 'done'] as const
+
+const rpm = z
+  .number('Give the speed in rpm as a number.')
+  .int('A speed is a whole number of rpm.')
+  .min(0, 'A speed is not below 0 rpm.')
+  .max(50_000, 'No mixer runs above 50 000 rpm.')
+
 export const doStepInput = z.object({
+  id: z.uuid(),
   stepId: z.uuid(),
   version,
-  actualSpeedRpm: z
-    .number('Give the speed in rpm as a number.')
-    .int('A speed is a whole number of rpm.')
-    .min(0, 'A speed is not below 0 rpm.')
-    .max(50_000, 'No mixer runs above 50 000 rpm.')
-    .nullable()
-    .default(null),
+  kind: z.enum(stepActs, 'A step begins, ends or is done.').default('done'),
+  actualSpeedRpm: rpm.nullable().default(null),
   actualMinutes: z
     .number('Give the minutes as a number.')
     .min(0, 'A step does not last less than 0 minutes.')
@@ -64,10 +92,82 @@ export const doStepInput = z.object({
     .max(200, 'A step is not hotter than 200 °C.')
     .nullable()
     .default(null),
+  /** Asked for where it was done otherwise than prescribed. */
   note: text(500),
   reason: text(500),
+  ...claim,
 })
 export type DoStepInput = z.infer<typeof doStepInput>
+
+export const fillJarInput = z
+  .object({
+    id: z.uuid(),
+    number: z.number('Give the number of the jar.').int('Jars are counted whole.').min(1).max(9_999),
+    tareG: z
+      .number('Give the empty jar in g as a number.')
+      .min(0, 'A jar does not weigh less than 0 g.')
+      .max(100_000, 'A jar of more than 100 kg cannot be right here.'),
+    grossG: grams('The full jar'),
+    torqueNm: z
+      .number('Give the closure torque in Nm as a number.')
+      .min(0, 'A torque is not below 0 Nm.')
+      .max(50, 'No closure takes more than 50 Nm.')
+      .nullable()
+      .default(null),
+    note: text(500),
+    supersedes: z.uuid().nullable().default(null),
+    reason: text(500),
+    ...claim,
+  })
+  .refine((jar) => jar.grossG > jar.tareG, {
+    path: ['grossG'],
+    message: 'The full jar weighs more than the empty one. Weigh it again.',
+  })
+export type FillJarInput = z.infer<typeof fillJarInput>
+
+export const readingMoments = ['in process', 'initial'] as const
+export type ReadingMoment = (typeof readingMoments)[number]
+export const batchAttributes = [
+  'look',
+  'ph',
+  'viscosity',
+  'density',
+  'centrifuge',
+  'droplets',
+  'temperature',
+] as const
+export type BatchAttribute = (typeof batchAttributes)[number]
+
+const figure = z.number('Type digits, with one comma or point.').min(0, 'That is not below 0.').max(1e6)
+export const batchReadingDetail = z.strictObject({
+  path: z.enum(['direct', 'extract', 'water phase']).optional(),
+  /** Of an extract: parts of water to one of emulsion. */
+  ratio: z.string().trim().max(40).optional(),
+  sampleTemperatureC: z.number('Type digits, with one comma or point.').min(-30).max(120).optional(),
+  spindle: z.string().trim().max(60).optional(),
+  torquePercent: figure.optional(),
+  spindleConstant: figure.optional(),
+  rpm: figure.optional(),
+  radiusMm: figure.optional(),
+  minutes: figure.optional(),
+})
+export type BatchReadingDetail = z.infer<typeof batchReadingDetail>
+
+export const batchReadingInput = z.object({
+  id: z.uuid(),
+  moment: z.enum(readingMoments, 'Say whether it was read in process or as the initial.'),
+  attribute: z.enum(batchAttributes, 'Choose what was read.'),
+  replicate: z.number().int().min(1).max(99).default(1),
+  typed: z.string().trim().min(1, 'Type what was read.').max(200, 'At most 200 signs fit here.'),
+  detail: batchReadingDetail.default({}),
+  instrumentId: z.uuid().nullable().default(null),
+  note: text(500),
+  supersedes: z.uuid().nullable().default(null),
+  /** Asked for with a correction, and before the rest is over. */
+  reason: text(500),
+  ...claim,
+})
+export type BatchReadingInput = z.infer<typeof batchReadingInput>
 
 export const finishMakingInput = z.object({
   version,

@@ -62,10 +62,11 @@ async function made(code: string) {
   const batch = (await make(versionId)).body.code as string
   const { weighings, steps } = await load(batch)
   for (const line of weighings) {
-    const body = { weighingId: line.id, version: 1, actualTyped: String(line.targetG) }
+    const body = { id: newId(), weighingId: line.id, version: 1, actualTyped: String(line.targetG) }
     expect((await put(WEIGH, batch, body)).status).toBe(200)
   }
-  for (const step of steps) expect((await put(STEP, batch, { stepId: step.id, version: 1 })).status).toBe(200)
+  for (const step of steps)
+    expect((await put(STEP, batch, { id: newId(), stepId: step.id, version: 1 })).status).toBe(200)
   return batch
 }
 
@@ -139,7 +140,13 @@ describe('a new batch', () => {
     const versionId = await newFormula('B6')
     const { count } = await countStatements(() =>
       transact(t.db, lena.actor, {}, (trx) =>
-        createBatch(trx, lena.actor, { id: newId(), formulaVersionId: versionId, sizeG: 100, note: '' }),
+        createBatch(trx, lena.actor, {
+          id: newId(),
+          formulaVersionId: versionId,
+          sizeG: 100,
+          tolerancePercent: null,
+          note: '',
+        }),
       ),
     )
     expect(count).toBeLessThanOrEqual(9)
@@ -150,7 +157,14 @@ describe('weighing', () => {
   it('keeps the weight as typed, with a decimal comma too, and the difference', async () => {
     const batch = (await make(await newFormula('W1'))).body.code
     const line = (await load(batch)).weighings[0]!
-    const body = { weighingId: line.id, version: 1, actualTyped: '280,50', lot: 'K-2217', balance: 'B2' }
+    const body = {
+      id: newId(),
+      weighingId: line.id,
+      version: 1,
+      actualTyped: '280,50',
+      lot: 'K-2217',
+      balance: 'B2',
+    }
     const answer = await put(WEIGH, batch, body)
     expect(answer.body).toMatchObject({ version: 2, actualG: 280.5, isWithin: true })
     expect(answer.body.differencePercent).toBeCloseTo(0.1786, 4)
@@ -161,37 +175,45 @@ describe('weighing', () => {
     })
   })
 
-  it('R03: wants a note outside half a percent and a reason for a correction', async () => {
+  it('R03: wants a note outside the tolerance and a reason for a correction', async () => {
     const batch = (await make(await newFormula('W2'))).body.code
     const line = (await load(batch)).weighings[0]!
-    const body = { weighingId: line.id, version: 1, actualTyped: '278' }
+    const body = { id: newId(), weighingId: line.id, version: 1, actualTyped: '276' }
     const bare = await put(WEIGH, batch, { ...body, note: '   ' })
     expect(bare.status).toBe(422)
-    expect(bare.body.error.sentence).toContain('Squalane is 2.00 g short')
+    expect(bare.body.error.sentence).toContain('Squalane is 4.00 g short')
     expect(bare.body.error.fields.note).toBeTruthy()
     expect((await put(WEIGH, batch, { ...body, note: 'The can is empty' })).status).toBe(200)
-    const again = { ...body, version: 2, actualTyped: '280' }
+    const again = { ...body, id: newId(), supersedes: body.id, version: 2, actualTyped: '280' }
     const silent = await put(WEIGH, batch, { ...again, reason: ' ' })
     expect(silent.status).toBe(422)
     expect(silent.body.error.fields.reason).toBeTruthy()
     const told = await put(WEIGH, batch, { ...again, reason: 'A second can was found' })
     expect(told.status).toBe(200)
+    const { portions, ...kept } = (await load(batch)).weighings[0]!
+    expect(kept).toMatchObject({ actualG: 280, version: 3 })
+    expect(portions.map(({ netG, supersedes, reason }) => [netG, supersedes, reason])).toEqual([
+      [276, null, ''],
+      [280, body.id, 'A second can was found'],
+    ])
     const trail = await t.owner
       .selectFrom('trail')
-      .select(['reason', 'before', 'after'])
+      .select(['reason', 'tableName', 'operation'])
       .where('requestId', '=', told.headers.get('x-request-id'))
-      .executeTakeFirstOrThrow()
-    expect(trail.reason).toBe('A second can was found')
-    expect(trail.before).toMatchObject({ actual_typed: '278' })
-    expect(trail.after).toMatchObject({ actual_typed: '280' })
+      .execute()
+    expect(trail.map((row) => `${row.operation} ${row.tableName}`).sort()).toEqual([
+      'insert batch_portion',
+      'update batch_weighing',
+    ])
+    expect(trail[0]?.reason).toBe('A second can was found')
   })
 
   it('D06: the second of two people at one line is told', async () => {
     const batch = (await make(await newFormula('W3'))).body.code
     const line = (await load(batch)).weighings[0]!
-    const body = { weighingId: line.id, version: 1, actualTyped: '280' }
+    const body = { id: newId(), weighingId: line.id, version: 1, actualTyped: '280' }
     expect((await put(WEIGH, batch, body, rolf)).status).toBe(200)
-    const stale = await put(WEIGH, batch, { ...body, actualTyped: '281' })
+    const stale = await put(WEIGH, batch, { ...body, id: newId(), actualTyped: '281' })
     expect(stale.status).toBe(412)
     expect(stale.body.error.sentence).toContain('Rolf Adler has written the weight of Squalane')
   })
@@ -200,11 +222,11 @@ describe('weighing', () => {
     const batch = (await make(await newFormula('W4'))).body.code
     const line = (await load(batch)).weighings[0]!
     for (const actualTyped of ['', 'abc', '1,000.5', '-3', '0', '99999999']) {
-      const answer = await put(WEIGH, batch, { weighingId: line.id, version: 1, actualTyped })
+      const answer = await put(WEIGH, batch, { id: newId(), weighingId: line.id, version: 1, actualTyped })
       expect(answer.status, actualTyped).toBe(422)
       expect(answer.body.error.fields.actualTyped, actualTyped).toBeTruthy()
     }
-    const ghost = { weighingId: newId(), version: 1, actualTyped: '1' }
+    const ghost = { id: newId(), weighingId: newId(), version: 1, actualTyped: '1' }
     expect((await put(WEIGH, batch, ghost)).status).toBe(404)
     expect((await put(WEIGH, 'W4-9', ghost)).status).toBe(404)
   })
@@ -215,6 +237,7 @@ describe('steps and yield', () => {
     const batch = (await make(await newFormula('S1'))).body.code
     const step = (await load(batch)).steps[1]!
     const body = {
+      id: newId(),
       stepId: step.id,
       version: 1,
       actualSpeedRpm: 320,
@@ -227,12 +250,14 @@ describe('steps and yield', () => {
       actualSpeedRpm: 320,
       actualMinutes: 46,
     })
-    expect((await put(STEP, batch, { ...body, version: 2 })).status).toBe(422)
-    expect((await put(STEP, batch, { ...body, version: 2, reason: 'Clock misread' })).status).toBe(200)
-    expect((await put(STEP, batch, { ...body, version: 1, reason: 'x' })).status).toBe(412)
+    expect((await put(STEP, batch, { ...body, id: newId(), version: 2 })).status).toBe(422)
+    expect(
+      (await put(STEP, batch, { ...body, id: newId(), version: 2, reason: 'Clock misread' })).status,
+    ).toBe(200)
+    expect((await put(STEP, batch, { ...body, id: newId(), version: 1, reason: 'x' })).status).toBe(412)
     const odd = await put(STEP, batch, { ...body, actualSpeedRpm: 1.5, actualMinutes: -1 })
     expect(Object.keys(odd.body.error.fields).sort()).toEqual(['actualMinutes', 'actualSpeedRpm'])
-    expect((await put(STEP, batch, { ...body, stepId: newId() })).status).toBe(404)
+    expect((await put(STEP, batch, { ...body, id: newId(), stepId: newId() })).status).toBe(404)
   })
 
   it('R10: making ends only when all is weighed and done, and its sheet is closed then', async () => {
@@ -248,9 +273,11 @@ describe('steps and yield', () => {
     expect((await put(FINISH, batch, { version: 7, yieldG: 1900 })).status).toBe(412)
     expect((await put(FINISH, batch, { version: 1, yieldG: 1900 })).body.state).toBe('resting')
     const { weighings, steps } = await load(batch)
-    const late = { weighingId: weighings[0]!.id, version: 2, actualTyped: '280', reason: 'Late' }
+    const late = { id: newId(), weighingId: weighings[0]!.id, version: 2, actualTyped: '280', reason: 'Late' }
     expect((await put(WEIGH, batch, late)).status).toBe(409)
-    expect((await put(STEP, batch, { stepId: steps[0]!.id, version: 2, reason: 'Late' })).status).toBe(409)
+    expect(
+      (await put(STEP, batch, { id: newId(), stepId: steps[0]!.id, version: 2, reason: 'Late' })).status,
+    ).toBe(409)
     expect((await put(FINISH, batch, { version: 2, yieldG: 1900 })).status).toBe(409)
   })
 })

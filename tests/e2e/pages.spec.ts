@@ -41,6 +41,8 @@ const visits: Visit[] = [
   { page: 'ingredients', who: 'liv', at: '/ingredients', phone: true },
   { page: 'batches', who: 'liv', at: '/batches' },
   { page: 'batches/[code]', who: 'liv', at: '/batches/N86-1' },
+  { page: 'batches/[code]/paper', who: 'liv', at: '/batches/N86-1/paper' },
+  { page: 'batches/new', who: 'liv', at: '/batches/new' },
   { page: 'protocols', who: 'liv', at: '/protocols' },
   { page: 'protocols/[code]', who: 'liv', at: { from: '/protocols', link: /^P-/ } },
   { page: 'stations', who: 'hedda', at: '/stations' },

@@ -2,7 +2,9 @@ import type { Metadata } from 'next'
 import { BatchList } from '@/components/batch/batch-list'
 import { ListSearch } from '@/components/formula/list-search'
 import { Heading } from '@/components/ui/heading'
+import { LinkButton } from '@/components/ui/link-button'
 import { Tabs } from '@/components/ui/tabs'
+import { may } from '@/lib/auth/permissions'
 import { listBatches } from '@/lib/batch/queries/list-batches'
 import { batchListQuery, batchStates } from '@/lib/batch/schema'
 import { page } from '@/lib/http/page'
@@ -29,6 +31,9 @@ export default async function BatchesPage({ searchParams }: Props) {
           </>
         }
         sentence={`${count('released')} of these are released; a study starts on a released batch.`}
+        acts={
+          may(actor, 'batch.write') ? <LinkButton href="/batches/new">Size a batch</LinkButton> : undefined
+        }
       />
       <div className="mt-6 flex flex-wrap items-end justify-between gap-x-8 gap-y-4">
         <ListSearch

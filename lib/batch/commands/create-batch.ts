@@ -5,7 +5,7 @@ import { newId } from '@/lib/db/id'
 import { totalSentence } from '@/lib/formula/rules/finding'
 import { wholeThousandths } from '@/lib/formula/rules/totals'
 import { refuse } from '@/lib/http/errors'
-import { targetGrams } from '../rules'
+import { targetGrams, usualTolerancePercent } from '../rules/weighing'
 import type { CreateBatchInput } from '../schema'
 
 /**
@@ -48,9 +48,10 @@ export async function createBatch(trx: Trx, actor: Actor, input: CreateBatchInpu
   }
   const code = `${formula.code}-${formula.batches + 1}`
   const { id, formulaVersionId, sizeG, note } = input
+  const tolerancePercent = input.tolerancePercent ?? formula.labTolerancePercent ?? usualTolerancePercent
   await trx
     .insertInto('batch')
-    .values({ id, code, formulaVersionId, sizeG, note, createdBy: actor.personId })
+    .values({ id, code, formulaVersionId, sizeG, tolerancePercent, note, createdBy: actor.personId })
     .execute()
   const weighings = lines.map((line, position) => ({
     id: newId(),
@@ -78,6 +79,11 @@ async function lockFormula(trx: Trx, formulaVersionId: string) {
     .selectFrom('formula')
     .innerJoin('formulaVersion', 'formulaVersion.formulaId', 'formula.id')
     .select(['formula.id', 'formula.code', 'formulaVersion.number', 'formulaVersion.state'])
+    .select(
+      sql<number | null>`(select (settings->>'weighingTolerancePercent')::numeric from lab)`.as(
+        'labTolerancePercent',
+      ),
+    )
     .where('formulaVersion.id', '=', formulaVersionId)
     .forUpdate()
     .executeTakeFirst()

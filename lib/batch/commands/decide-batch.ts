@@ -2,7 +2,7 @@ import { sql } from 'kysely'
 import type { Actor } from '@/lib/auth/actor'
 import type { Trx } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
-import { restHours } from '../rules'
+import { restHours } from '../rules/rest'
 import type { DecideInput } from '../schema'
 import { assertState, findBatch, staleRow } from './find-batch'
 
@@ -24,7 +24,7 @@ export async function decideBatch(trx: Trx, actor: Actor, code: string, input: D
   if (!isRelease && !input.reason) {
     throw refuse.invalid(`Say why ${code} is rejected.`, { reason: 'Say why it is rejected.' })
   }
-  if (isRelease && !input.reason && (await restedHours(trx, batch.id)) < restHours.least) {
+  if (isRelease && !input.reason && (batch.restedHours ?? 0) < restHours.least) {
     throw refuse.invalid(
       `${code} has not rested ${restHours.least} h yet. Wait, or say why it is released now.`,
       { reason: 'Say why it is released before the rest is over.' },
@@ -37,13 +37,4 @@ export async function decideBatch(trx: Trx, actor: Actor, code: string, input: D
     .where('id', '=', batch.id)
     .returning(['code', 'state', 'version'])
     .executeTakeFirstOrThrow()
-}
-
-async function restedHours(trx: Trx, batchId: string): Promise<number> {
-  const { hours } = await trx
-    .selectFrom('batch')
-    .select(sql<number>`extract(epoch from app_now() - made_at) / 3600`.as('hours'))
-    .where('id', '=', batchId)
-    .executeTakeFirstOrThrow()
-  return hours
 }

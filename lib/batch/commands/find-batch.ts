@@ -1,6 +1,8 @@
+import { sql } from 'kysely'
 import type { Trx } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
-import type { BatchState } from '../schema'
+import { claimedInstant } from '@/lib/reading/rules/claimed-time'
+import type { BatchState, Claimed } from '../schema'
 
 /** The batch's row, locked: its state decides what may follow. */
 export async function findBatch(trx: Trx, code: string) {
@@ -9,7 +11,11 @@ export async function findBatch(trx: Trx, code: string) {
     .innerJoin('formulaVersion', 'formulaVersion.id', 'batch.formulaVersionId')
     .innerJoin('formula', 'formula.id', 'formulaVersion.formulaId')
     .select(['batch.id', 'batch.code', 'batch.state', 'batch.version', 'batch.madeAt'])
-    .select(['batch.emulsionTypeFound', 'formula.emulsionType'])
+    .select(['batch.emulsionTypeFound', 'formula.emulsionType', 'batch.tolerancePercent', 'batch.createdAt'])
+    .select([
+      sql<string>`app_now()`.as('now'),
+      sql<number | null>`extract(epoch from app_now() - batch.made_at) / 3600`.as('restedHours'),
+    ])
     .where('batch.code', '=', code)
     .forUpdate('batch')
     .executeTakeFirst()
@@ -47,4 +53,17 @@ export async function staleRow(
     `${change?.by ?? 'Someone'} has written ${what} since you opened it. What you typed is still here: look at theirs first.`,
     change,
   )
+}
+
+/** When it was done by the server's clock, and whether that is later typing from paper; refused before the batch began. */
+export function whenDone(batch: { code: string; now: string; createdAt: string }, claimed: Claimed): string {
+  if (claimed.claimedAt === null) return batch.now
+  const { claimedAt, deviceNow } = claimed
+  const { measuredAt } = claimedInstant({ claimedAt, deviceNow: deviceNow ?? batch.now }, batch.now)
+  // The sheet is printed from the batch, so nothing on it is older; a minute is left for clocks that are read.
+  if (Date.parse(measuredAt) < Date.parse(batch.createdAt) - 60_000) {
+    const sentence = `${batch.code} was begun later than that. Look at the date again.`
+    throw refuse.invalid(sentence, { claimedAt: sentence })
+  }
+  return measuredAt
 }

@@ -2,7 +2,7 @@ import { sql } from 'kysely'
 import type { Actor } from '@/lib/auth/actor'
 import type { Trx } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
-import { gramsText } from '../rules'
+import { gramsText } from '../rules/weighing'
 import type { FinishMakingInput } from '../schema'
 import { assertState, findBatch, staleRow } from './find-batch'
 

@@ -2,7 +2,7 @@ import { sql } from 'kysely'
 import type { Actor } from '@/lib/auth/actor'
 import type { Trx } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
-import { isTypeAsStated } from '../rules'
+import { isTypeAsStated } from '../rules/finding'
 import type { TestTypeInput } from '../schema'
 import { assertState, findBatch, staleRow } from './find-batch'
 

@@ -3,10 +3,12 @@ import type { Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
 import type { EmulsionType } from '@/lib/formula/schema'
 import { refuse } from '@/lib/http/errors'
+import { listInstruments } from '@/lib/instrument/queries'
 import type { BatchState, TypeFound, TypeTestMethod } from '../schema'
+import { listBatchReadings, listEntries, listFilledJars, listPortions } from './list-record'
 
-/** A batch with its weighing sheet and its process: three statements. */
-export async function getBatch(db: Db, _actor: Actor, code: string) {
+/** A batch with its weighing sheet, process, jars and readings: eight statements, whatever their number. */
+export async function getBatch(db: Db, actor: Actor, code: string) {
   const batch = await db
     .selectFrom('batch')
     .innerJoin('formulaVersion', 'formulaVersion.id', 'batch.formulaVersionId')
@@ -18,6 +20,7 @@ export async function getBatch(db: Db, _actor: Actor, code: string) {
       'batch.id',
       'batch.code',
       'batch.sizeG',
+      'batch.tolerancePercent',
       'batch.state',
       'batch.madeAt',
       'batch.yieldG',
@@ -41,19 +44,36 @@ export async function getBatch(db: Db, _actor: Actor, code: string) {
       'formula.emulsionType',
       'formulaVersion.number as versionNumber',
       sql<number | null>`extract(epoch from app_now() - batch.made_at) / 3600`.as('restedHours'),
+      sql<string>`(app_now() at time zone coalesce((select time_zone from lab), 'UTC'))::date::text`.as(
+        'today',
+      ),
     ])
     .where('batch.code', '=', code)
     .executeTakeFirst()
   if (!batch) throw refuse.notFound(`There is no batch ${code}. Look for it in the list of batches.`)
-  const [weighings, steps] = await Promise.all([listWeighings(db, batch.id), listSteps(db, batch.id)])
+  const [lines, portions, steps, entries, jars, readings, instruments] = await Promise.all([
+    listWeighings(db, batch.id),
+    listPortions(db, batch.id),
+    listSteps(db, batch.id),
+    listEntries(db, batch.id),
+    listFilledJars(db, batch.id),
+    listBatchReadings(db, [batch.id]),
+    listInstruments(db, actor),
+  ])
   return {
     ...batch,
     state: batch.state as BatchState,
     emulsionType: batch.emulsionType as EmulsionType,
     emulsionTypeMethod: batch.emulsionTypeMethod as TypeTestMethod | null,
     emulsionTypeFound: batch.emulsionTypeFound as TypeFound | null,
-    weighings,
-    steps,
+    weighings: lines.map((line) => ({
+      ...line,
+      portions: portions.filter((portion) => portion.weighingId === line.id),
+    })),
+    steps: steps.map((step) => ({ ...step, entries: entries.filter((entry) => entry.stepId === step.id) })),
+    jars,
+    readings,
+    instruments: instruments.filter((instrument) => instrument.isActive),
   }
 }
 

@@ -5,10 +5,12 @@ import { createBatch } from '@/lib/batch/commands/create-batch'
 import { decideBatch } from '@/lib/batch/commands/decide-batch'
 import { doStep } from '@/lib/batch/commands/do-step'
 import { finishMaking } from '@/lib/batch/commands/finish-making'
+import { readBatch } from '@/lib/batch/commands/read-batch'
 import { testEmulsionType } from '@/lib/batch/commands/test-type'
 import { weighLine } from '@/lib/batch/commands/weigh-line'
 import { getBatch } from '@/lib/batch/queries/get-batch'
 import {
+  batchReadingInput,
   createBatchInput,
   decideInput,
   doStepInput,
@@ -96,6 +98,21 @@ function linesOf(formula: DemoFormula, ids: Map<string, string>) {
 
 const thousandths = (percent: number | null) => (percent === null ? null : Math.round(percent * 1000))
 
+const spun = {
+  ...{ attribute: 'centrifuge', typed: '0' },
+  detail: { rpm: 3000, radiusMm: 100, minutes: 30 },
+}
+const creamInitial = [
+  { attribute: 'look', typed: 'White, glossy, stands in a peak' },
+  { attribute: 'ph', typed: '5.50', detail: { path: 'extract', ratio: '1 : 9' } },
+  spun,
+]
+const lotionInitial = [
+  { attribute: 'look', typed: 'White, smooth, pours' },
+  { attribute: 'ph', typed: '5.50', detail: { path: 'direct' } },
+  spun,
+]
+
 export type Batch = { id: string; code: string; formula: string }
 
 /** A batch made, weighed, stirred, tested and released, as the notebook asks for it. */
@@ -125,6 +142,7 @@ export async function makeBatch(
         liv,
         code,
         weighInput.parse({
+          id: newId(),
           weighingId: line.id,
           version: line.version,
           actualTyped: Math.max(0.01, line.targetG * (1 + filling.noise.normal() * 0.0008)).toFixed(2),
@@ -139,10 +157,14 @@ export async function makeBatch(
         liv,
         code,
         doStepInput.parse({
+          id: newId(),
           stepId: step.id,
           version: step.version,
           actualSpeedRpm: step.speedRpm,
-          actualMinutes: step.minutes === null ? null : step.minutes + Math.round(filling.noise.normal()),
+          actualMinutes:
+            step.minutes === null
+              ? null
+              : step.minutes + Math.max(-1, Math.min(1, Math.round(filling.noise.normal()))),
           actualTemperatureC: step.temperatureC,
         }),
       )
@@ -167,6 +189,8 @@ export async function makeBatch(
         conductivityUsCm: isOilInWater ? 1200 : 0.4,
       }),
     )
+    for (const reading of isOilInWater ? lotionInitial : creamInitial)
+      await readBatch(trx, liv, code, batchReadingInput.parse({ id: newId(), moment: 'initial', ...reading }))
   })
   await filling.act(liv, daysAgo(filling, madeDaysAgo - 2, 8), async (trx) => {
     const { version } = await getBatch(trx, liv, code)

@@ -33,6 +33,7 @@ export default async function BatchPage({ params, searchParams }: Props) {
     <SWRConfig value={{ fallback: { [batchKey(code)]: batch } }}>
       <BatchView
         code={code}
+        personId={actor.personId}
         part={parts.find((part) => part === query['part']) ?? null}
         mayWrite={may(actor, 'batch.write')}
       />

@@ -1,57 +1,6 @@
 import { grouped } from '@/lib/formula/rules/numbers'
-import { percentOf } from '@/lib/science/percent'
-import type { BatchState, TypeFound } from './schema'
-
-/** [practice] A line is taken as weighed right within half a percent of its target … */
-export const tolerancePercent = 0.5
-/** … and never finer than a balance of 0.01 g shows. */
-export const balanceStepG = 0.01
-
-/** [practice] An emulsion rests this long before its type test and its initial readings. */
-export const restHours = { least: 24, most: 72 }
-
-export function targetGrams(sizeG: number, percentThousandths: number): number {
-  return Math.round(sizeG * percentThousandths) / 100_000
-}
-
-export function toleranceGrams(targetG: number): number {
-  return Math.max((targetG * tolerancePercent) / 100, balanceStepG)
-}
-
-export type Weighed = {
-  differenceG: number
-  /** Null where the target is 0. */
-  differencePercent: number | null
-  isWithin: boolean
-  /** "0.38 g to go", "0.41 g too much", "within 0.5 %". */
-  words: string
-}
-
-export function weighed(targetG: number, actualG: number): Weighed {
-  const differenceG = actualG - targetG
-  // Grams are read to 0.001; without rounding 52.26 would miss a limit of 52.26 by float noise.
-  const isWithin = Math.round(Math.abs(differenceG) * 1e6) <= Math.round(toleranceGrams(targetG) * 1e6)
-  const off = gramsText(Math.abs(differenceG))
-  return {
-    differenceG,
-    differencePercent: targetG > 0 ? percentOf(differenceG, targetG) : null,
-    isWithin,
-    words: isWithin ? 'Within what is allowed' : `${off} g ${differenceG < 0 ? 'to go' : 'too much'}`,
-  }
-}
-
-/** Two decimals as the balance shows them; three below 1 g. */
-export function gramsText(grams: number): string {
-  return grouped(grams, Math.abs(grams) > 0 && Math.abs(grams) < 1 && !isHundredths(grams) ? 3 : 2)
-}
-
-const isHundredths = (grams: number) => Math.abs(grams * 100 - Math.round(grams * 100)) < 1e-6
-
-export function percentOffText(percent: number | null): string {
-  if (percent === null) return ''
-  const sign = percent > 0 ? '+' : percent < 0 ? '\u2212' : ''
-  return `${sign}${Math.abs(percent).toFixed(2)} %`
-}
+import type { BatchState, TypeFound } from '../schema'
+import { restHours } from './rest'
 
 type BatchFacts = {
   state: BatchState
