@@ -3,7 +3,7 @@ import { Section } from '@/components/ui/section'
 import { percentText } from '@/lib/formula/rules/numbers'
 import { familyGrid } from '@/lib/formula/rules/variants'
 import type { Family } from '@/lib/formula/queries/list-families'
-import { compareAddress } from '@/lib/formula/schema'
+import { compareAddress, mostCompared } from '@/lib/formula/schema'
 
 type Props = { family: Family; code: string }
 
@@ -27,12 +27,19 @@ export function FamilyPart({ family, code }: Props) {
         </>
       }
       aside={
-        <Link href={compareAddress(codes.slice(0, 12))} className="font-650 underline underline-offset-4">
-          Compare where they stand
-        </Link>
+        <span className="flex flex-wrap gap-x-5 font-650 [&_a]:underline [&_a]:underline-offset-4">
+          {family.base.code === code ? null : (
+            <Link
+              href={`/formulas/${family.base.code}/difference?${new URLSearchParams({ from: String(family.base.number), with: code })}`}
+            >
+              Difference to the base
+            </Link>
+          )}
+          <Link href={compareAddress(codes.slice(0, mostCompared))}>Compare where they stand</Link>
+        </span>
       }
     >
-      <div className="overflow-x-auto" tabIndex={0} role="region" aria-label="Family grid">
+      <div className="relative overflow-x-auto" tabIndex={0} role="region" aria-label="Family grid">
         <table className="border-collapse text-15">
           <caption className="sr-only">Members of the family by level</caption>
           <thead>

@@ -1,6 +1,7 @@
 'use client'
 
 import { Button } from '@/components/ui/button'
+import { LinkButton } from '@/components/ui/link-button'
 import type { FormulaPage } from '@/lib/formula/queries/get-formula'
 import { percentText } from '@/lib/formula/rules/numbers'
 import type { FormulaTotals } from '@/lib/formula/rules/totals'
@@ -23,6 +24,11 @@ export function FormulaActs({ formula, handle, totals, onSave }: Props) {
       {formula.state === 'locked' && !draft ? (
         <NewVersion formula={formula} next={(formula.versions.at(-1)?.number ?? 0) + 1} />
       ) : null}
+      {handle.isDirty ? (
+        <Button why="Save it first.">Vary it</Button>
+      ) : (
+        <LinkButton href={`/formulas/${formula.code}/variants?version=${formula.number}`}>Vary it</LinkButton>
+      )}
       <MakeBatch formula={formula} why={why} />
       {formula.state === 'draft' ? (
         <Button kind="primary" busy={handle.isSaving} onClick={onSave}>

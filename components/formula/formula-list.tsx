@@ -1,6 +1,8 @@
 'use client'
 
+import Form from 'next/form'
 import Link from 'next/link'
+import { Button } from '@/components/ui/button'
 import { Empty } from '@/components/ui/empty'
 import { Ledger, type LedgerColumn } from '@/components/ui/ledger'
 import { LinkButton } from '@/components/ui/link-button'
@@ -10,19 +12,46 @@ import type { FormulaListQuery } from '@/lib/formula/schema'
 
 type Props = { formulas: FormulaRow[]; query: FormulaListQuery; mayWrite: boolean }
 
+/** The list, and ticked in it the formulas that are compared; the picks go into the address. */
 export function FormulaList({ formulas, query, mayWrite }: Props) {
   return (
-    <Ledger
-      caption="Formulas"
-      rows={formulas}
-      rowKey={(row) => row.id}
-      empty={<NoFormula query={query} mayWrite={mayWrite} />}
-      columns={columns.map((column) => ({ ...column, sort: sortOf(column.key, query) }))}
-    />
+    <Form action="/formulas/compare">
+      <Ledger
+        caption="Formulas"
+        rows={formulas}
+        rowKey={(row) => row.id}
+        empty={<NoFormula query={query} mayWrite={mayWrite} />}
+        columns={columns.map((column) =>
+          column.key === 'pick' ? column : { ...column, sort: sortOf(column.key, query) },
+        )}
+      />
+      {formulas.length > 1 ? (
+        <div className="mt-3 flex flex-wrap items-center gap-x-4 gap-y-2">
+          <Button type="submit">Compare the ticked</Button>
+          <p className="text-13 text-soft">
+            At most twelve: which prototype stands where, in its studies so far.
+          </p>
+        </div>
+      ) : null}
+    </Form>
   )
 }
 
 const columns: LedgerColumn<FormulaRow>[] = [
+  {
+    key: 'pick',
+    title: <span className="sr-only">compare</span>,
+    width: '34px',
+    cell: (row) => (
+      <input
+        type="checkbox"
+        name="code"
+        value={row.code}
+        aria-label={`Compare ${row.code}`}
+        className="tick block"
+      />
+    ),
+  },
   {
     key: 'code',
     title: 'code',

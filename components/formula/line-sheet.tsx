@@ -74,7 +74,7 @@ export function LineSheet({
   return (
     <div>
       {/* overflow-x-auto clips the list of found ingredients, so only narrow screens scroll the sheet. */}
-      <div className="overflow-x-auto pb-2 lg:overflow-visible">
+      <div className="relative overflow-x-auto pb-2 lg:overflow-visible">
         <table
           ref={sheet}
           onKeyDown={press}
@@ -84,7 +84,7 @@ export function LineSheet({
           <caption className="sr-only">Lines of the formula</caption>
           <colgroup>
             <col />
-            {columnWidths.map((width, index) => (
+            {columnWidths(before !== null).map((width, index) => (
               <col key={index} style={{ width }} />
             ))}
           </colgroup>
@@ -164,7 +164,7 @@ export function LineSheet({
 }
 
 /** After the INCI name: function, was, % w/w, g/mL, per kg, in, acts. */
-const columnWidths = [108, 58, 64, 54, 56, 26, 92]
+const columnWidths = (hasBefore: boolean) => [112, hasBefore ? 58 : 28, 64, 54, 56, 26, 84]
 
 function wasShare(line: TypedLine, remainder: number, before: Map<string, string> | null): string | null {
   if (!before || !line.inciName.trim()) return null

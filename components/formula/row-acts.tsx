@@ -21,7 +21,7 @@ export function RowActs({ of, onUp, onDown, onRemove, onGrip }: Props) {
         data-grip
         title={`Drag ${of}`}
         onPointerDown={onGrip}
-        className="grid h-8 w-5 cursor-grab touch-none place-items-center rounded hover:bg-recess active:cursor-grabbing"
+        className="grid h-8 w-[18px] cursor-grab touch-none place-items-center rounded hover:bg-recess active:cursor-grabbing"
       >
         <svg viewBox="0 0 14 14" width="14" height="14">
           <path d="M2 4H12M2 7H12M2 10H12" stroke="currentColor" strokeWidth="1.5" />
@@ -42,7 +42,7 @@ function Act({ label, onPress, path }: { label: string; onPress?: () => void; pa
       title={label}
       aria-disabled={onPress ? undefined : true}
       onClick={onPress}
-      className={`grid h-8 w-6 place-items-center rounded ${onPress ? 'hover:bg-recess' : 'opacity-40'}`}
+      className={`grid h-8 w-[22px] place-items-center rounded ${onPress ? 'hover:bg-recess' : 'opacity-40'}`}
     >
       <svg viewBox="0 0 14 14" width="14" height="14" aria-hidden>
         <path d={path} fill="none" stroke="currentColor" strokeWidth="1.75" />

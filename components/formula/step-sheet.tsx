@@ -81,7 +81,7 @@ export function StepSheet({ steps, problems, onSteps, undo }: Props) {
 
   return (
     <div>
-      <div className="overflow-x-auto">
+      <div className="relative overflow-x-auto">
         <table
           ref={sheet}
           onKeyDown={press}

@@ -34,6 +34,21 @@ export function VersionsPart({ formula }: { formula: FormulaPage }) {
           title: 'made as',
           cell: (version) => version.batchCodes.join(', ') || 'no batch yet',
         },
+        {
+          key: 'difference',
+          title: 'what changed',
+          cell: (version) =>
+            version.number === formula.versions[0]?.number ? (
+              <span className="text-soft">the first</span>
+            ) : (
+              <Link
+                href={`/formulas/${formula.code}/difference?to=${version.number}`}
+                className="underline underline-offset-4"
+              >
+                Difference<span className="sr-only"> of version {version.number} to the one before</span>
+              </Link>
+            ),
+        },
         { key: 'note', title: 'why', from: 'tablet', cell: (version) => version.note },
       ]}
     />

@@ -121,6 +121,7 @@ const series = (formulaId: string, more: Partial<ComparedSeries>): ComparedSerie
   ...{ formulaId, studyCode: 'S-1', batchId: 'b', batchCode: `${formulaId}-1`, studyStationId: 's' },
   ...{ kind: 'temperature', temperatureC: 45, voice: 'decides', attribute: 'separation', standing: 'steady' },
   ...{ outSinceWeeks: null, leavesAtWeeks: null, latestWeeks: 8 },
+  ...{ timePoints: [1, 2, 4, 8], endWeeks: 12 },
   ...more,
 })
 const formulas = ['N1', 'N2', 'N3'].map((code) => ({ id: code, code }))
@@ -133,6 +134,7 @@ describe('where prototypes stand', () => {
     series('N2', { attribute: 'ph', standing: 'leaning', leavesAtWeeks: 14 }),
     series('N3', {}),
     series('N3', { kind: 'freeze-thaw', temperatureC: null }),
+    series('N1', { kind: 'freeze-thaw', temperatureC: null, standing: 'out', outSinceWeeks: 2.1 }),
   ]
 
   it('are shelves from the hottest down, each place the worst of its batches', () => {
@@ -143,14 +145,16 @@ describe('where prototypes stand', () => {
     expect(separation?.places.map((place) => place?.series.standing ?? null)).toEqual(['out', null, 'steady'])
     expect(separation?.places[0]?.others).toBe(1)
     expect(placeText(separation!.places[0]!)).toBe('week 5')
-    expect(placeText(ph!.places[1]!)).toBe('out in 14')
-    expect(placeText(separation!.places[2]!)).toBe('to 8')
+    expect(placeText(ph!.places[1]!)).toBe('out week 14')
+    expect(placeText(separation!.places[2]!)).toBe('to week 8')
   })
 
   it('give the finding: who stands everywhere, and who is out from when', () => {
     const finding = comparisonFinding(formulas, found)
     expect(`${finding.strong}${finding.rest}`).toBe('N3 stands everywhere so far')
-    expect(finding.sentence).toBe('Out: N1 at 45 °C from week 5. Leaning: N2.')
+    expect(finding.sentence).toBe(
+      'Out: N1 at 45 °C from week 5 and in freeze-thaw from cycle 2. Leaning: N2.',
+    )
     expect(comparisonFinding(formulas.slice(0, 1), found).rest).toBe(' is out somewhere')
     expect(comparisonFinding(formulas, []).strong).toBe('Too early')
     expect(comparisonFinding([], []).sentence).toContain('Pick formulas')

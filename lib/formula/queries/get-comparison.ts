@@ -82,7 +82,12 @@ async function listSeries(db: Db, actor: Actor, formulaIds: string[]): Promise<C
     .select(['formulaVersion.formulaId', 'study.code as studyCode', 'series.batchId'])
     .select(['batch.code as batchCode', 'series.studyStationId', 'station.kind', 'studyStation.temperatureC'])
     .select(['studyStation.voice', 'series.attribute', 'series.outSinceWeeks', 'series.leavesAtWeeks'])
-    .select('series.latestWeeks')
+    .select(['series.latestWeeks', 'study.endWeeks'])
+    .select(
+      sql<number[]>`coalesce(study.plan->'stations'->study_station.position->'timePoints', '[]')`.as(
+        'timePoints',
+      ),
+    )
     .select((eb) => eb.ref('series.standing').$castTo<Standing>().as('standing'))
     .where(sql<boolean>`formula_version.formula_id = any(${formulaIds}::uuid[])`)
     .where(studiesOf(actor))

@@ -1,6 +1,6 @@
 import { attributes, type AttributeKey } from '@/lib/reading/schema/attributes'
 import { worstOf } from '@/lib/study/rules/cells'
-import { degrees } from '@/lib/study/rules/finding'
+import { degrees, timeWords } from '@/lib/study/rules/finding'
 import { capital, counted, listed, numberWord } from '@/lib/study/rules/words'
 import type { Standing } from '@/lib/science/series'
 
@@ -18,6 +18,9 @@ export type ComparedSeries = {
   outSinceWeeks: number | null
   leavesAtWeeks: number | null
   latestWeeks: number | null
+  /** Of its station in its study: cycles are counted by them, and a long study in months. */
+  timePoints: number[]
+  endWeeks: number
 }
 
 /** Where one formula stands with one attribute at one kind of station: its worst batch, and how many were read. */
@@ -33,7 +36,6 @@ const ranks: Standing[] = ['untold', 'steady', 'leaning', 'out']
 
 /** Stations of the same kind and temperature are one shelf, hottest first as on a sheet; a row for each attribute. */
 export function shelvesOf(formulaIds: readonly string[], series: readonly ComparedSeries[]): Shelf[] {
-  const keyOf = (one: ComparedSeries) => (one.kind === 'temperature' ? `${one.temperatureC}` : one.kind)
   const order = Object.keys(attributes)
   return [...new Map(series.map((one) => [keyOf(one), one])).entries()]
     .toSorted(([, a], [, b]) => heat(b) - heat(a))
@@ -120,15 +122,34 @@ export function comparisonFinding(
 }
 
 function outSentence(out: readonly ComparedFormula[], series: readonly ComparedSeries[]): string {
-  const parts = out.map(({ id, code }) => {
-    const first = series
-      .filter((one) => one.formulaId === id && one.standing === 'out')
-      .toSorted((a, b) => (a.outSinceWeeks ?? Infinity) - (b.outSinceWeeks ?? Infinity))[0]!
-    const week = first.outSinceWeeks === null ? '' : ` from week ${Math.round(first.outSinceWeeks)}`
-    return `${code} ${stationWords(first)}${first.kind === 'temperature' ? week : ''}`
-  })
+  const parts = out.map(
+    ({ id, code }) => `${code} ${outPlaces(series.filter((one) => one.formulaId === id))}`,
+  )
   return parts.length ? `Out: ${parts.join('; ')}.` : ''
 }
+
+/** Each station where it is out, with what left first there, hottest first. */
+function outPlaces(series: readonly ComparedSeries[]): string {
+  const first = new Map<string, ComparedSeries>()
+  for (const one of series) {
+    if (one.standing !== 'out') continue
+    const known = first.get(keyOf(one))
+    if (!known || (one.outSinceWeeks ?? Infinity) < (known.outSinceWeeks ?? Infinity))
+      first.set(keyOf(one), one)
+  }
+  const places = [...first.values()].toSorted((a, b) => heat(b) - heat(a))
+  return listed(
+    places.map((one) =>
+      one.outSinceWeeks === null
+        ? stationWords(one)
+        : `${stationWords(one)} from ${timeOf(one, one.outSinceWeeks)}`,
+    ),
+  )
+}
+
+const keyOf = (one: ComparedSeries) => (one.kind === 'temperature' ? `${one.temperatureC}` : one.kind)
+const timeOf = (one: ComparedSeries, weeks: number) =>
+  timeWords({ ...one, id: one.studyStationId }, weeks, one.endWeeks)
 
 export function stationWords({ kind, temperatureC }: Pick<ComparedSeries, 'kind' | 'temperatureC'>): string {
   if (kind === 'freeze-thaw') return 'in freeze-thaw'
@@ -138,9 +159,9 @@ export function stationWords({ kind, temperatureC }: Pick<ComparedSeries, 'kind'
 /** Under a mark: since when it is out, when it is to leave, or that it holds. */
 export function placeText({ series }: Place): string {
   const { standing, outSinceWeeks, leavesAtWeeks, latestWeeks } = series
-  if (standing === 'out') return outSinceWeeks === null ? 'out' : `week ${Math.round(outSinceWeeks)}`
+  if (standing === 'out') return outSinceWeeks === null ? 'out' : timeOf(series, outSinceWeeks)
   if (standing === 'leaning')
-    return leavesAtWeeks === null ? 'leaning' : `out in ${Math.round(leavesAtWeeks)}`
+    return leavesAtWeeks === null ? 'leaning' : `out ${timeOf(series, leavesAtWeeks)}`
   if (standing === 'untold') return 'untold'
-  return latestWeeks === null ? 'holds' : `to ${Math.round(latestWeeks)}`
+  return latestWeeks === null ? 'holds' : `to ${timeOf(series, latestWeeks)}`
 }

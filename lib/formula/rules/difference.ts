@@ -37,6 +37,30 @@ export function difference(from: Side, to: Side): Difference {
   }
 }
 
+type Told = Pick<Difference, 'from' | 'to' | 'counts'>
+
+/** What came of it, and how much was touched, as the page's headline. */
+export function differenceFinding({ from, to, counts }: Told, inside: 'water' | 'oil') {
+  const parts = [
+    counts.changed ? `${counts.changed} changed` : '',
+    counts.added ? `${counts.added} new` : '',
+    counts.removed ? `${counts.removed} gone` : '',
+  ].filter(Boolean)
+  const touched = parts.length ? `Lines and steps: ${parts.join(', ')}.` : 'No line and no step differs.'
+  const [a, b] = [from, to].map((side) => side.internalVolumePercent)
+  if (typeof a !== 'number' || typeof b !== 'number')
+    return {
+      strong: parts.length ? 'Different' : 'The same',
+      rest: ', and one holds nothing yet',
+      sentence: touched,
+    }
+  const [was, now] = [`${a.toFixed(1)} %`, `${b.toFixed(1)} %`]
+  if (!parts.length)
+    return { strong: 'Nothing', rest: ` differs: ${now} ${inside} inside`, sentence: touched }
+  const rest = was === now ? ` ${inside} inside, as before` : ` ${inside} inside, it was ${was}`
+  return { strong: now, rest, sentence: `By volume. ${touched}` }
+}
+
 function consequences({ emulsionType, lines }: Side): Consequences {
   return { ...formulaTotals(lines), ...oilAndWater(emulsionType, lines) }
 }
