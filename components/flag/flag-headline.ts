@@ -69,6 +69,12 @@ function verbOf(flag: FlagPage): string {
       return 'Looks changed'
     case 'odour':
       return 'Smells changed'
+    case 'leakage':
+      return 'Leaks'
+    case 'panelling':
+      return 'The pack caves in'
+    case 'pump':
+      return 'The pump falters'
     default:
       return `${attributeName(flag.attribute)} ${isDown ? 'falls' : 'rises'}`
   }

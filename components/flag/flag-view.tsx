@@ -14,7 +14,7 @@ import { fetcher } from '@/lib/http/fetcher'
 import { attributeKey } from '@/lib/reading/schema/attributes'
 import { percentOf } from '@/lib/science/percent'
 import { dayIn, spokenDay } from '@/lib/study/rules/calendar'
-import { shownValue, shownWithUnit } from '@/lib/study/rules/words'
+import { isWorded, shownValue, shownWithUnit } from '@/lib/study/rules/words'
 import { AnswerPanel } from './answer-panel'
 import { Comments } from './comments'
 import type { FlagContext } from './flag-context'
@@ -70,9 +70,7 @@ export function FlagView({ number, context, rights }: Props) {
           {context.shelf ? (
             <FlagShelf
               shelf={context.shelf}
-              attribute={
-                flag.attribute === 'look' || flag.attribute === 'odour' ? flag.attribute : 'separation'
-              }
+              attribute={isWorded(flag.attribute) ? flag.attribute : 'separation'}
               detectionPercent={context.detectionPercent}
               allowed={whole(allowedOf(flag) ?? '')}
             />
@@ -182,8 +180,9 @@ function sign(value: number): string {
 }
 
 function allowedOf(flag: FlagPage): string | null {
-  const of = flag.attribute === 'look' || flag.attribute === 'odour' ? flag.series : flag.separation
+  const shown = isWorded(flag.attribute) ? flag.attribute : 'separation'
+  const of = shown === 'separation' ? flag.separation : flag.series
   const upper = of?.finding.band.upper
   if (typeof upper !== 'number') return null
-  return `allowed up to ${shownWithUnit(flag.attribute === 'look' || flag.attribute === 'odour' ? flag.attribute : 'separation', upper)}`
+  return `allowed up to ${shownWithUnit(shown, upper)}`
 }

@@ -50,7 +50,11 @@ export function PlanGrid({ plan, reads, onToggle }: Props) {
         <tbody>
           {plan.stations.map((station, index) => (
             <tr key={index}>
-              <th scope="row" className="h-[58px] pr-3 text-left align-bottom" style={shelf(station)}>
+              <th
+                scope="row"
+                className={`${variantOf(station) ? 'h-[78px]' : 'h-[58px]'} pr-3 text-left align-bottom`}
+                style={shelf(station)}
+              >
                 <StationLabel
                   celsius={station.kind === 'temperature' ? station.temperatureC : null}
                   name={station.kind === 'transport' ? 'on road' : undefined}

@@ -2,25 +2,15 @@ import { planChanges } from '@/lib/protocol/rules/changes'
 import { askedAt, stationName } from '@/lib/protocol/rules/plan'
 import { cycleText } from '@/lib/protocol/rules/words'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
-import { attributeOf } from '@/lib/reading/schema/attributes'
-import { capital, counted, listed } from '@/lib/study/rules/words'
+import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { capital, listed } from '@/lib/study/rules/words'
 
 /** Cycles, and what is not read everywhere: what the grid of jars cannot show. */
 export function StationWords({ plan }: { plan: ProtocolPlan }) {
-  const sentences = plan.stations.flatMap((station, index) => {
-    const name = stationName(station, index)
-    const cycle = station.cycle ? [`${capital(name)}: a cycle is ${cycleText(station.cycle)}.`] : []
-    const leftOut = plan.attributes.flatMap(({ attribute }) => {
-      const weeks = station.timePoints.filter(
-        (week) => !askedAt(plan, station, week).some((one) => one.attribute === attribute),
-      )
-      if (weeks.length === 0) return []
-      return [
-        `${capital(name)}: ${attributeOf(attribute).label} is not read in ${counted(weeks.length, 'week')}: ${listed(weeks.map(String))}.`,
-      ]
-    })
-    return [...cycle, ...leftOut]
-  })
+  const cycles = plan.stations.flatMap((station, index) =>
+    station.cycle ? [`${capital(stationName(station, index))}: a cycle is ${cycleText(station.cycle)}.`] : [],
+  )
+  const sentences = [...cycles, ...plan.attributes.flatMap(({ attribute }) => leftOutWords(plan, attribute))]
   if (sentences.length === 0) return null
   return (
     <ul className="mt-3 text-15">
@@ -28,6 +18,22 @@ export function StationWords({ plan }: { plan: ProtocolPlan }) {
         <li key={sentence}>{sentence}</li>
       ))}
     </ul>
+  )
+}
+
+/** Stations that leave out the same weeks are named together. */
+function leftOutWords(plan: ProtocolPlan, attribute: AttributeKey): string[] {
+  const places = new Map<string, string[]>()
+  plan.stations.forEach((station, index) => {
+    const weeks = station.timePoints.filter(
+      (week) => !askedAt(plan, station, week).some((one) => one.attribute === attribute),
+    )
+    if (weeks.length === 0) return
+    const text = `${weeks.length === 1 ? 'week' : 'weeks'} ${listed(weeks.map(String))}`
+    places.set(text, [...(places.get(text) ?? []), stationName(station, index)])
+  })
+  return [...places].map(
+    ([weeks, names]) => `${attributeOf(attribute).label} is not read in ${weeks} at ${names.join('; ')}.`,
   )
 }
 

@@ -126,8 +126,9 @@ export function StationEditor({ stations, setStation, setStations, faults, field
 function Faults({ index, faults, fields }: { index: number } & Pick<Props, 'faults' | 'fields'>) {
   const path = `plan.stations.${index}.`
   const own = faults.filter((fault) => fault.path.startsWith(path))
+  // What the plan's own rules say is said live, so an answer to an earlier save would only be stale.
   const answered = Object.entries(fields).filter(
-    ([field, sentence]) => field.startsWith(path) && !own.some((fault) => fault.sentence === sentence),
+    ([field]) => field.startsWith(path) && !/\.(windowDays|leftOut)$/.test(field),
   )
   return (
     <>

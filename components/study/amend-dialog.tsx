@@ -100,12 +100,7 @@ export function AmendDialog({ study, stations, onClose }: Props) {
       acts={
         <>
           <Button onClick={onClose}>Leave it as it is</Button>
-          <Button
-            kind={kind === 'station end' ? 'danger-asked' : 'primary'}
-            busy={busy}
-            why={reason.trim() === '' ? 'Say why.' : undefined}
-            onClick={amend}
-          >
+          <Button kind={kind === 'station end' ? 'danger-asked' : 'primary'} busy={busy} onClick={amend}>
             Amend it
           </Button>
         </>
@@ -132,13 +127,7 @@ export function AmendDialog({ study, stations, onClose }: Props) {
       ) : null}
       {kind === 'time point' ? (
         <div className="flex flex-wrap items-end gap-4">
-          <NumberField
-            label="Week"
-            value={week}
-            onText={setWeek}
-            error={fields['week'] ?? fields['input.week']}
-            wrap="w-[200px]"
-          />
+          <NumberField label="Week" value={week} onText={setWeek} error={fields['week']} wrap="w-[200px]" />
           <Checkbox label="Measure too" checked={isMeasured} onSet={setIsMeasured} />
         </div>
       ) : null}

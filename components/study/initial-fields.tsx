@@ -1,5 +1,6 @@
 'use client'
 
+import { TakeInitial } from '@/components/batch/take-initial'
 import { NumberField } from '@/components/ui/number-field'
 import { RadioGroup } from '@/components/ui/radio-group'
 import { readNumber } from '@/components/ui/read-number'
@@ -85,6 +86,22 @@ export function InitialFields({ offer, draft, plan, set, fields }: Props) {
                   planned={planned}
                   draft={draft}
                   texts={draft.typed[typedKey(batch.id, planned.attribute)]}
+                />
+                <TakeInitial
+                  batchCode={batch.code}
+                  asked={{
+                    attribute: planned.attribute,
+                    torque: planned.viscosity && draft.isTorque ? planned.viscosity : null,
+                    replicates: planned.replicates,
+                  }}
+                  onTake={({ texts, instrumentId }) =>
+                    set({
+                      typed: { ...draft.typed, [typedKey(batch.id, planned.attribute)]: texts },
+                      ...(instrumentId
+                        ? { instrumentIds: { ...draft.instrumentIds, [planned.attribute]: instrumentId } }
+                        : {}),
+                    })
+                  }
                 />
               </div>
             ))}

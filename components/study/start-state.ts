@@ -2,6 +2,7 @@ import { readNumber } from '@/components/ui/read-number'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
 import { jarsOfPlan } from '@/lib/protocol/rules/plan'
 import type { ProtocolRow } from '@/lib/protocol/queries'
+import { startsAtZero } from '@/lib/reading/schema/attributes'
 import { jarsFromGrams } from '@/lib/science/jar-grams'
 import type { ReleasedBatch } from '@/lib/study/queries/batches'
 import { adjustedPlan, waysToFit } from '@/lib/study/rules/plan'
@@ -83,10 +84,9 @@ export function stationsOf(offer: Offer, draft: Draft, plan: ProtocolPlan) {
 }
 
 /** Attributes whose initial is typed: where the band is told from it, or it is not nothing by definition. */
-const startsAtNothing = new Set(['separation', 'look', 'odour', 'mass'])
 export function initialAttributes(plan: ProtocolPlan) {
   return plan.attributes.filter(
-    ({ attribute, tolerance }) => tolerance.kind !== 'range' || !startsAtNothing.has(attribute),
+    ({ attribute, tolerance }) => tolerance.kind !== 'range' || !startsAtZero(attribute),
   )
 }
 

@@ -2,6 +2,7 @@ import { demoPeople } from '@/fixtures/demo/people'
 import { databaseUrl } from '@/lib/env'
 import { demoPassword } from '@/lib/lab/rules'
 import { isSetUp } from '@/lib/lab/queries'
+import { amendStory } from './seed/amend'
 import { fillCases } from './seed/cases'
 import { openFilling, type Filling } from './seed/context'
 import { batchesOf, layGround, tell, tellFinished } from './seed/finished'
@@ -110,6 +111,7 @@ async function fill(open: Omit<Filling, 'people'>): Promise<void> {
     },
     say,
   )
+  await amendStory(filling, apart.id, apart.code)
   console.log('photos')
   await fillPhotos(filling, apart.id)
   console.log('questions, flags and cases')

@@ -7,11 +7,13 @@ import { askedAt, jarsAtStation, jarsOfPlan, stationName } from '@/lib/protocol/
 import { readyMadePlan } from '@/lib/protocol/rules/ready-made'
 import { bandText, cycleText, toleranceText } from '@/lib/protocol/rules/words'
 import { protocolPlan, type PlannedStation, type ProtocolPlan } from '@/lib/protocol/schema'
+import { attributeOf, startsAtZero } from '@/lib/reading/schema/attributes'
 import { cycleDoubts } from '@/lib/reading/rules/entry-doubts'
 import { toleranceBand } from '@/lib/science/band'
 import { plannedJars } from '@/lib/study/rules/jars'
 import { adjustedPlan } from '@/lib/study/rules/plan'
 import { refuseStations } from '@/lib/study/rules/refusals'
+import { isWorded } from '@/lib/study/rules/words'
 import { chosenStations } from '@/lib/study/rules/stations'
 
 const plan = readyMadePlan('screen', 'cream')
@@ -246,5 +248,28 @@ describe('what differs between two versions', () => {
       'Set aside for outside laboratories: nothing, now 2 for microbiology.',
       'Matrixed: nothing, now pH.',
     ])
+  })
+})
+
+describe('what is read of a pack', () => {
+  it.each([
+    ['leakage', 'watch', 'none'],
+    ['panelling', 'watch', 'none'],
+    ['pump', 'measuring', 'as the initial'],
+  ] as const)('%s is a word of the %s jar that begins as "%s"', (key, jar, first) => {
+    expect(attributeOf(key)).toMatchObject({ kind: 'word', jar, isGradual: false })
+    expect(attributeOf(key).words?.[0]).toBe(first)
+    expect(startsAtZero(key)).toBe(true)
+    expect(isWorded(key)).toBe(true)
+    const pack: ProtocolPlan = {
+      ...plan,
+      attributes: [
+        { attribute: key, tolerance: { kind: 'range', upper: 1 }, replicates: 1, method: 'by hand' },
+      ],
+      ownPack: 'airless pump, 30 mL',
+      stations: [warm, { ...warm, isOwnPack: true }],
+    }
+    expect(missingInPlan(pack)).toBeNull()
+    expect(pack.stations.map(stationName)).toEqual(['40 °C', '40 °C, own pack'])
   })
 })

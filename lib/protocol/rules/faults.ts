@@ -88,7 +88,8 @@ export function overlap(
   if (at === -1) return null
   const [before, after] = [timePoints[at - 1]!, timePoints[at]!]
   const most = Math.ceil((dayOf(after) - dayOf(before)) / 2) - 1
-  const act = most >= 0 ? `Make the window at most ${most} ${most === 1 ? 'day' : 'days'}` : 'Take one of them out'
+  const act =
+    most >= 0 ? `Make the window at most ${most} ${most === 1 ? 'day' : 'days'}` : 'Take one of them out'
   return `At ${name} the windows of week ${before} and week ${after} overlap. ${act}, or move a time point.`
 }
 

@@ -92,11 +92,52 @@ export const attributes = {
     repeatability: { kind: 'relative', sd: 0.03, highInternalPhaseSd: 0.08 },
     isGradual: true,
   },
+  leakage: {
+    key: 'leakage',
+    label: 'Leakage',
+    unit: '',
+    decimals: 0,
+    kind: 'word',
+    jar: 'watch',
+    possible: { lower: 0, upper: 3 },
+    repeatability: { kind: 'absolute', sd: 0.5, highInternalPhaseSd: 0.5 },
+    words: ['none', 'a trace', 'drops', 'runs out'],
+    isGradual: false,
+  },
+  panelling: {
+    key: 'panelling',
+    label: 'Panelling',
+    unit: '',
+    decimals: 0,
+    kind: 'word',
+    jar: 'watch',
+    possible: { lower: 0, upper: 3 },
+    repeatability: { kind: 'absolute', sd: 0.5, highInternalPhaseSd: 0.5 },
+    words: ['none', 'slight', 'clear', 'collapsed'],
+    isGradual: false,
+  },
+  pump: {
+    key: 'pump',
+    label: 'Pump',
+    unit: '',
+    decimals: 0,
+    kind: 'word',
+    jar: 'measuring',
+    possible: { lower: 0, upper: 3 },
+    repeatability: { kind: 'absolute', sd: 0.5, highInternalPhaseSd: 0.5 },
+    words: ['as the initial', 'first strokes empty', 'weak', 'fails'],
+    isGradual: false,
+  },
 } as const satisfies Record<string, Attribute>
 
 export type AttributeKey = keyof typeof attributes
 
 export const attributeKey = z.enum(Object.keys(attributes) as [AttributeKey, ...AttributeKey[]])
+
+/** By definition nothing has happened yet at the start, whether or not somebody wrote it down. */
+export function startsAtZero(key: AttributeKey): boolean {
+  return key === 'separation' || key === 'mass' || attributes[key].kind === 'word'
+}
 
 export function attributeOf(key: AttributeKey): Attribute {
   return attributes[key]

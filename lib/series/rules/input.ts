@@ -1,4 +1,4 @@
-import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { attributeOf, startsAtZero, type AttributeKey } from '@/lib/reading/schema/attributes'
 import { mean } from '@/lib/science/mean'
 import { weeksSince } from '@/lib/science/months'
 import { phaseFraction } from '@/lib/science/phase-fraction'
@@ -25,9 +25,6 @@ export type Unit = {
   input: SeriesInput
   jars: JarReading[]
 }
-
-/** By definition nothing has happened yet at the start, whether or not somebody wrote it down. */
-const startsAtZero = new Set<AttributeKey>(['separation', 'look', 'odour', 'mass'])
 
 /** What the rules are given, per batch, station and attribute of the study's plan. */
 export function seriesUnits(
@@ -93,7 +90,7 @@ export function initialOf(frame: Frame, batchId: string, attribute: AttributeKey
   )
   const initial = own.filter((r) => r.studyStationId === null)
   if (initial.length > 0) return initial.map((r) => r.value!)
-  if (startsAtZero.has(attribute)) return [0]
+  if (startsAtZero(attribute)) return [0]
   const planned = frame.study.plan.attributes.find((one) => one.attribute === attribute)
   const [first] = own
   if (planned?.tolerance.kind !== 'range' || !first) return []

@@ -1,7 +1,7 @@
 import type { SeriesFinding, Standing } from '@/lib/science/series'
 import { addDays, spokenDay } from './calendar'
 import { degrees, inSentence, type Phrase } from './finding'
-import { capital, counted, withVariant } from './words'
+import { capital, counted, isWorded, withVariant } from './words'
 
 type Series = {
   studyStationId: string
@@ -25,7 +25,7 @@ export function curvesFinding(input: {
 }): { headline: Phrase[]; sentence: string } {
   const { study } = input
   // Words against the initial have no curve.
-  const series = input.series.filter(({ attribute }) => attribute !== 'look' && attribute !== 'odour')
+  const series = input.series.filter(({ attribute }) => !isWorded(attribute))
   const day = (weeks: number, withYear = true) =>
     spokenDay(addDays(study.startedOn, Math.round(weeks * 7)), withYear)
   const leaning = series

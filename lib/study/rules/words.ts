@@ -54,6 +54,11 @@ export function shownWithUnit(attribute: string, value: number): string {
   return known?.unit && !('words' in known) ? `${shown} ${known.unit}` : shown
 }
 
+/** Read in words against the initial, so it has neither a curve nor a distance. */
+export function isWorded(attribute: string): boolean {
+  return attributes[attribute as AttributeKey]?.kind === 'word'
+}
+
 function threeFigures(value: number): string {
   if (value === 0) return '0'
   const text = value.toPrecision(3)
