@@ -2,6 +2,7 @@
 
 import { useMemo, type ReactNode } from 'react'
 import { Drawn } from '../marks/drawn'
+import { round2 } from '../marks/shape'
 import { emulsionShapes, spotFor } from './emulsion-shapes'
 import type { EmulsionInput } from './emulsion-shapes'
 import { useWidth } from './use-width'
@@ -69,8 +70,12 @@ export function EmulsionSection({
           <Drawn shapes={shapes} />
           {isBeside
             ? questions.map((question, index) => {
-                const y = index * pitch + 14
-                const [x, spotY] = spotFor(question.at, y + 12, drops, { width, height })
+                // The browser's cosine may differ from the server's in its last digit; rounded, both draw the same.
+                const y = round2(index * pitch + 14)
+                const [x, spotY] = spotFor(question.at, y + 12, drops, { width, height }).map(round2) as [
+                  number,
+                  number,
+                ]
                 const colour = question.isOpen ? 'var(--alarm)' : 'var(--ink)'
                 return (
                   <g key={question.id}>

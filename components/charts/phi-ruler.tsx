@@ -77,13 +77,13 @@ export function PhiRuler({ phi, before }: { phi: number; before?: { phi: number;
               <g>
                 <circle
                   cx={labelX + 52}
-                  cy={26}
+                  cy={11}
                   r={4}
                   fill="var(--ground)"
                   stroke="var(--ink)"
                   strokeWidth={1.5}
                 />
-                <text x={labelX + 61} y={31} fontSize={14}>
+                <text x={labelX + 61} y={16} fontSize={14}>
                   {before.text}
                 </text>
               </g>
