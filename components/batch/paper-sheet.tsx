@@ -30,7 +30,7 @@ export function PaperSheet({ batch }: { batch: BatchPage }) {
       </div>
       <article className="paper-sheet mt-6 max-w-[190mm] text-15 print:mt-0 print:max-w-none print:text-[10.5pt]">
         <header className="flex items-baseline justify-between gap-6 border-b-[3px] border-ink pb-1">
-          <h2 className="text-26 font-700">
+          <h2 className="text-24 font-700 print:text-20">
             <span className="font-mono">{batch.code}</span>, {batch.formulaName}
           </h2>
           <p className="whitespace-nowrap">
@@ -55,7 +55,7 @@ function Weighing({ batch }: { batch: BatchPage }) {
     <Part title={`Weighing, within ${batch.tolerancePercent} % and never under 0.01 g`}>
       <Table
         caption="Weighing sheet"
-        heads={['', 'Ingredient', '%', 'Target g', 'Allowed', 'Lot', 'Tare g', 'Weighed g', 'Time', 'By']}
+        heads={['', 'Ingredient', '%', 'Target g', 'Allowed', 'Lot', 'Tare g', 'Net g', 'Time', 'By']}
         rights={[2, 3, 4]}
         rows={batch.weighings.map((line) => {
           const off = toleranceGrams(line.targetG, batch.tolerancePercent)
@@ -67,11 +67,11 @@ function Weighing({ batch }: { batch: BatchPage }) {
             </>,
             percentText(line.percentThousandths),
             <b key="target">{gramsText(line.targetG)}</b>,
-            `± ${gramsText(off)}`,
+            `±\u00a0${gramsText(off)}`,
             ...['', '', '', '', ''],
           ]
         })}
-        widths={['5%', '25%', '8%', '10%', '8%', '13%', '8%', '10%', '7%', '6%']}
+        widths={['4%', '27%', '8%', '11%', '10%', '11%', '8%', '9%', '6%', '6%']}
       />
     </Part>
   )
@@ -173,7 +173,7 @@ type TableProps = {
 }
 
 function Table({ caption, heads, rows, widths, rights = [] }: TableProps) {
-  const side = (index: number) => (rights.includes(index) ? 'text-right' : 'text-left')
+  const side = (index: number) => (rights.includes(index) ? 'text-right whitespace-nowrap' : 'text-left')
   return (
     <div className="overflow-x-auto print:overflow-visible">
       <table className="w-full min-w-[720px] table-fixed border-collapse print:min-w-0">

@@ -26,7 +26,8 @@ export function ReadingForm({ work, moment, corrected, onKept }: Props) {
   const { keep, isSending, fields, refusal } = useEntry(work)
   const [id] = useState(newId)
   const [draft, set, forget] = useKeptDraft(
-    `${work.personId}.${batch.id}.${moment}.${corrected?.id ?? 'new'}`,
+    // Counted on, so that what was just kept is not found again as a draft.
+    `${work.personId}.${batch.id}.${moment}.${corrected?.id ?? batch.readings.length}`,
     corrected ? draftOf(corrected) : emptyDraft(phPathFor(batch.emulsionType)),
   )
   const attribute = batchAttributes.find((one) => one === draft.attribute)
@@ -71,7 +72,7 @@ export function ReadingForm({ work, moment, corrected, onKept }: Props) {
         disabled={corrected !== null}
         error={fields['attribute']}
         options={batchAttributes.map((key) => ({ value: key, label: measured[key].label }))}
-        onPick={(picked) => set({ attribute: picked, typed: '' })}
+        onPick={(picked) => set({ attribute: picked, typed: '', instrumentId: '' })}
       />
       {attribute ? (
         <>

@@ -32,7 +32,7 @@ export function ReadingsPart({ work, moment }: { work: BatchWork; moment: Readin
       title={moment === 'initial' ? 'Initial readings' : 'Checks in process'}
       sentence={
         moment === 'initial'
-          ? `${restOf(batch.restedHours ?? 0).sentence} A study that starts on this batch can take them as its initial.`
+          ? `${restOf(batch.restedHours ?? 0).sentence} A study’s start offers them as its initial.`
           : 'What is looked at while it is made: temperature, pH, look.'
       }
     >

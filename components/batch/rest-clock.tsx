@@ -20,7 +20,7 @@ export function RestClock({ restedHours }: { restedHours: number }) {
         {rest.toWait ? `${rest.toWait} to wait` : `Rested ${Math.floor(hours)} h`}
       </figcaption>
       <svg
-        viewBox="-8 -6 632 52"
+        viewBox="-20 -6 650 52"
         className="h-auto w-full"
         role="img"
         aria-label={`${Math.floor(hours)} of ${restHours.least} to ${restHours.most} h`}

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { batchFinding, isTypeAsStated } from '@/lib/batch/rules/finding'
-import { batchValue, isTorqueJar, initialOf } from '@/lib/batch/rules/readings'
+import { batchValue, initialForStudy, initialOf, isTorqueJar } from '@/lib/batch/rules/readings'
 import { restOf } from '@/lib/batch/rules/rest'
 import { deviations, stepCautions, stepTimes } from '@/lib/batch/rules/steps'
 import {
@@ -122,6 +122,17 @@ describe('readings of a batch', () => {
     ]
     expect(initialOf(readings, 'initial', 'viscosity')).toBe(62_000)
     expect(initialOf(readings, 'initial', 'ph')).toBeNull()
+  })
+
+  it('are offered to a study as they are typed there, a torque only with the same spindle and speed', () => {
+    const reading = { moment: 'initial', attribute: 'viscosity', supersedes: null, instrumentId: 'v1' }
+    const detail = { spindle: 'T-bar C', rpm: 10, torquePercent: 62 }
+    const readings = [{ ...reading, id: 'a', replicate: 1, value: 62_000, typed: '62', detail }]
+    const asked = { attribute: 'viscosity', replicates: 3, torque: { spindle: 'T-bar C', rpm: 10 } }
+    expect(initialForStudy(readings, asked)).toEqual({ texts: ['62'], instrumentId: 'v1' })
+    expect(initialForStudy(readings, { ...asked, torque: null })?.texts).toEqual(['62000'])
+    expect(initialForStudy(readings, { ...asked, torque: { spindle: 'T-bar D', rpm: 10 } })).toBeNull()
+    expect(initialForStudy(readings, { ...asked, attribute: 'ph' })).toBeNull()
   })
 
   it('wait for the rest and ask for the torque of every tenth jar', () => {

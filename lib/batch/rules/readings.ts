@@ -97,6 +97,28 @@ export function initialOf(readings: readonly Reading[], moment: string, attribut
   return values.length ? mean(values) : null
 }
 
+type ForStudy = Reading & { typed: string; detail: BatchReadingDetail; instrumentId: string | null }
+type Asked = { attribute: string; torque: { spindle: string; rpm: number } | null; replicates: number }
+
+/**
+ * What a study's start takes from the batch: its initial as it is to be typed there. A torque serves only where it was
+ * read with the protocol's spindle and speed.
+ */
+export function initialForStudy(readings: readonly ForStudy[], asked: Asked) {
+  const own = currentReadings(readings)
+    .filter((reading) => reading.moment === 'initial' && reading.attribute === asked.attribute)
+    .filter((reading) => reading.value !== null)
+    .toSorted((a, b) => a.replicate - b.replicate)
+    .slice(0, asked.replicates)
+  const { torque } = asked
+  const isSame = ({ detail }: ForStudy) => detail.spindle === torque?.spindle && detail.rpm === torque?.rpm
+  if (!own.length || (torque && !own.every(isSame))) return null
+  return {
+    texts: own.map((reading) => (torque || asked.attribute === 'ph' ? reading.typed : String(reading.value))),
+    instrumentId: own.find((reading) => reading.instrumentId)?.instrumentId ?? null,
+  }
+}
+
 /** [practice] Closure torque is measured on the first jar and on every tenth after it. */
 export const torqueEvery = 10
 export const isTorqueJar = (number: number) => (number - 1) % torqueEvery === 0
