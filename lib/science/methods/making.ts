@@ -57,7 +57,9 @@ export const weighingMethod: Method = {
     { key: 'actualG', says: 'weighed', unit: 'g' },
     { key: 'allowedG', says: 'allowed either way', unit: 'g' },
   ],
-  sources: [{ text: 'The batch’s own tolerance is allowed, usually 1 %, never under 0.01 g', mark: 'practice' }],
+  sources: [
+    { text: 'The batch’s own tolerance is allowed, usually 1 %, never under 0.01 g', mark: 'practice' },
+  ],
   topic: null,
 }
 
