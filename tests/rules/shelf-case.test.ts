@@ -1,3 +1,5 @@
+import { weaknesses } from '@/lib/shelf-case/rules/weakness'
+import type { TemperatureRecord } from '@/lib/shelf-case/rules/content'
 import { describe, expect, it } from 'vitest'
 import { AppError } from '@/lib/http/errors'
 import { canonicalJson } from '@/lib/shelf-case/rules/canonical'
@@ -95,4 +97,33 @@ describe('who signs, and when', () => {
     for (const state of ['drafting', 'sent back', 'signed', 'superseded'] as const)
       expect(() => assertState('C-001', state, 'put forward', 'signed')).toThrow(/cannot be signed/)
   })
+})
+
+it('tells every amendment of the study among what weakens a case, with its reason and who made it', () => {
+  const found = weaknesses({
+    batches: [{}, {}, {}],
+    flags: [],
+    amendments: [
+      {
+        number: 1,
+        sentence: '40 °C ended early, in week 16.',
+        reason: 'The oven failed.',
+        madeAt: '2026-11-17T09:00:00.000Z',
+        madeBy: 'LB',
+      },
+    ],
+    station: { name: 'room cabinet' },
+    attributes: [],
+    record: {} as TemperatureRecord,
+    missing: [],
+    dataMonths: 6,
+  })
+  expect(found).toEqual([
+    {
+      state: 'answered',
+      title: 'Amendment 1 while the study ran',
+      text: '40 °C ended early, in week 16. The oven failed.',
+      by: 'LB, 17 Nov 2026',
+    },
+  ])
 })

@@ -8,7 +8,7 @@ import { assessStudy } from '@/lib/series/rules/assess'
 export type Evidence = Awaited<ReturnType<typeof loadEvidence>>
 
 /**
- * Everything a case is computed from, in ten statements whatever the size of the study. The series are judged anew
+ * Everything a case is computed from, in eleven statements whatever the size of the study. The series are judged anew
  * from the readings, so that what a case freezes is what its inputs give.
  */
 export async function loadEvidence(db: Db | Trx, actor: Actor, studyId: string) {
@@ -103,6 +103,13 @@ export async function loadEvidence(db: Db | Trx, actor: Actor, studyId: string) 
     .where('pj.state', '=', 'missed')
     .orderBy('pull.timeWeeks')
     .execute()
+  const amendments = await db
+    .selectFrom('studyAmendment as a')
+    .innerJoin('person as p', 'p.id', 'a.madeBy')
+    .select(['a.number', 'a.sentence', 'a.reason', 'a.madeAt', 'p.initials as madeBy'])
+    .where('a.studyId', '=', studyId)
+    .orderBy('a.number')
+    .execute()
   return {
     study: { ...study, plan: study.plan as ProtocolPlan },
     lab,
@@ -120,6 +127,7 @@ export async function loadEvidence(db: Db | Trx, actor: Actor, studyId: string) 
     readings: readings.map((r) => ({ ...r, detail: r.detail as Record<string, unknown> })),
     flags,
     missed,
+    amendments,
   }
 }
 

@@ -112,6 +112,7 @@ export function computeCase(
     weakens: weaknesses({
       batches: evidence.batches,
       flags: evidence.flags,
+      amendments: evidence.amendments,
       station,
       attributes,
       record,

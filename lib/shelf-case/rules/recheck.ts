@@ -195,7 +195,13 @@ function shelfFigures(content: CaseContent): Rechecked[] {
 /** Doubts that the figures themselves raise; those of flags are quoted from the record. */
 function weaknessFigures(content: CaseContent): Rechecked[] {
   if (content.format === 'stillstand-case-1') return []
-  const computed = weaknesses({ ...content, flags: [], record: content.temperatureRecord, missing: [] })
+  const computed = weaknesses({
+    ...content,
+    flags: [],
+    amendments: [],
+    record: content.temperatureRecord,
+    missing: [],
+  })
   const stated = content.weakens.filter((w) => w.state === 'stands' && !/^Flag \d+ is open$/.test(w.title))
   return [figure('doubts that the figures raise', stated, computed)]
 }

@@ -11,6 +11,7 @@ import type { Evidence } from '@/lib/shelf-case/queries/evidence'
 export function weaknesses(from: {
   batches: unknown[]
   flags: Evidence['flags']
+  amendments: Evidence['amendments']
   station: { name: string }
   attributes: AttributeEvidence[]
   record: TemperatureRecord | null
@@ -68,13 +69,19 @@ export function weaknesses(from: {
       text: [f.sentence, f.why].filter(Boolean).join(' '),
       by: f.answeredBy && f.answeredAt ? `${f.answeredBy}, ${dayText(f.answeredAt)}` : null,
     }))
+  const amended = from.amendments.map((a): Weakness => ({
+    state: 'answered',
+    title: `Amendment ${a.number} while the study ran`,
+    text: `${a.sentence} ${a.reason}`,
+    by: `${a.madeBy}, ${dayText(a.madeAt)}`,
+  }))
   const missing = from.missing.map((m): Weakness => ({
     state: 'missing',
     title: `${m.jar}, ${m.label}: not read`,
     text: m.reason,
     by: null,
   }))
-  return [...stands, ...answered, ...missing]
+  return [...stands, ...answered, ...amended, ...missing]
 }
 
 function capital(text: string): string {
