@@ -93,7 +93,18 @@ export async function up(db: Kysely<any>): Promise<void> {
     );
     create unique index batch_reading_once on batch_reading (batch_id, moment, attribute, replicate)
       where supersedes is null;
-
+  `.execute(db)
+  for (const table of ['batch_portion', 'batch_step_entry', 'batch_jar', 'batch_reading'])
+    await sql`select add_trail(${table}), grant_app(${table}, 'select, insert'), append_only(${table})`.execute(
+      db,
+    )
+  // What was weighed and done before stands as rows too, and each row on the trail says where it came from.
+  await sql`
+    select set_config('app.actor_id', '00000000-0000-7000-8000-000000000001', true),
+      set_config('app.reason', 'Carried over when portions and presses became rows of their own', true),
+      set_config('app.request_id', 'migration 0008', true)
+  `.execute(db)
+  await sql`
     insert into batch_portion (id, batch_weighing_id, gross_typed, net_g, is_last, lot, balance, note,
         weighed_at, recorded_at, weighed_by)
       select gen_random_uuid(), id, coalesce(actual_typed, actual_g::text), actual_g, true, lot, balance, note,
@@ -105,8 +116,4 @@ export async function up(db: Kysely<any>): Promise<void> {
         done_at, done_at, done_by
       from batch_step where done_at is not null and done_by is not null;
   `.execute(db)
-  for (const table of ['batch_portion', 'batch_step_entry', 'batch_jar', 'batch_reading'])
-    await sql`select add_trail(${table}), grant_app(${table}, 'select, insert'), append_only(${table})`.execute(
-      db,
-    )
 }
