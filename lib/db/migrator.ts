@@ -6,17 +6,20 @@ import pg from 'pg'
 
 export const migrationsFolder = path.resolve(import.meta.dirname, '../../migrations')
 
-/** Forward only. Kysely holds an advisory lock, so of two servers starting at once one migrates and one waits. */
-export async function migrate(ownerUrl: string): Promise<string[]> {
+/**
+ * Forward only. Kysely holds an advisory lock, so of two servers starting at once one migrates and one waits. `until`
+ * stops after that migration, to make a database as an earlier release left it.
+ */
+export async function migrate(ownerUrl: string, until?: string): Promise<string[]> {
   const db = new Kysely<unknown>({
     dialect: new PostgresDialect({ pool: new pg.Pool({ connectionString: ownerUrl, max: 2 }) }),
   })
   try {
     await assertRoles(db)
-    const { error, results } = await new Migrator({
-      db,
-      provider: { getMigrations: readMigrations },
-    }).migrateToLatest()
+    const migrator = new Migrator({ db, provider: { getMigrations: readMigrations } })
+    const { error, results } = await (until === undefined
+      ? migrator.migrateToLatest()
+      : migrator.migrateTo(until))
     if (error) {
       const failed = results?.find((result) => result.status === 'Error')?.migrationName
       const why = error instanceof Error ? error.message : String(error)
