@@ -55,7 +55,7 @@ function Weighing({ batch }: { batch: BatchPage }) {
     <Part title={`Weighing, within ${batch.tolerancePercent} % and never under 0.01 g`}>
       <Table
         caption="Weighing sheet"
-        heads={['', 'Ingredient', '%', 'Target g', 'Allowed', 'Lot', 'Tare g', 'Net g', 'Time', 'By']}
+        heads={['Phase', 'Ingredient', '%', 'Target g', 'Allowed', 'Lot', 'Tare g', 'Net g', 'Time', 'By']}
         rights={[2, 3, 4]}
         rows={batch.weighings.map((line) => {
           const off = toleranceGrams(line.targetG, batch.tolerancePercent)
@@ -71,7 +71,7 @@ function Weighing({ batch }: { batch: BatchPage }) {
             ...['', '', '', '', ''],
           ]
         })}
-        widths={['4%', '27%', '8%', '11%', '10%', '11%', '8%', '9%', '6%', '6%']}
+        widths={['6%', '25%', '8%', '11%', '10%', '11%', '8%', '9%', '6%', '6%']}
       />
     </Part>
   )
@@ -83,7 +83,7 @@ function Steps({ batch }: { batch: BatchPage }) {
     <Part title="Process: what was done otherwise than prescribed is explained on its line">
       <Table
         caption="Process steps"
-        heads={['', 'Step, as prescribed', 'Begin', 'End', 'rpm', 'min', '°C', 'Otherwise, and why', 'By']}
+        heads={['No.', 'Step, as prescribed', 'Begin', 'End', 'rpm', 'min', '°C', 'Otherwise, and why', 'By']}
         rows={batch.steps.map((step, index) => [
           <b key="number">{index + 1}</b>,
           <>
@@ -98,7 +98,7 @@ function Steps({ batch }: { batch: BatchPage }) {
           </>,
           ...['', '', '', '', '', '', ''],
         ])}
-        widths={['4%', '38%', '8%', '8%', '8%', '7%', '7%', '14%', '6%']}
+        widths={['5%', '37%', '8%', '8%', '8%', '7%', '7%', '14%', '6%']}
       />
     </Part>
   )
@@ -175,7 +175,7 @@ type TableProps = {
 function Table({ caption, heads, rows, widths, rights = [] }: TableProps) {
   const side = (index: number) => (rights.includes(index) ? 'text-right whitespace-nowrap' : 'text-left')
   return (
-    <div className="overflow-x-auto print:overflow-visible">
+    <div tabIndex={0} role="region" aria-label={caption} className="overflow-x-auto print:overflow-visible">
       <table className="w-full min-w-[720px] table-fixed border-collapse print:min-w-0">
         <caption className="sr-only">{caption}</caption>
         <colgroup>

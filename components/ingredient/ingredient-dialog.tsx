@@ -1,6 +1,7 @@
 'use client'
 
 import { useState } from 'react'
+import { mutate } from 'swr'
 import { Button } from '@/components/ui/button'
 import { Dialog } from '@/components/ui/dialog'
 import { ErrorNote } from '@/components/ui/error-note'
@@ -48,6 +49,8 @@ export function IngredientDialog({ ingredient, mayWrite, timeZone, onClose, onDo
       const body = bodyOf(typed)
       if (ingredient) await send(ingredientKey(id), 'PUT', { ...body, version: over })
       else await send(ingredientsListKey, 'POST', { ...body, id })
+      // Opened again at once, it must not tell of the change before.
+      await mutate(ingredientKey(id))
       toast(`${typed.inciName.trim()} is ${ingredient ? 'changed' : 'added'}.`)
       onDone()
       onClose()

@@ -1,9 +1,12 @@
 'use client'
 
-import { setNonce } from 'get-nonce'
+import { getNonce, setNonce } from 'get-nonce'
 
-/** The dialogs of radix lock scrolling with a style element; the policy wants the page's nonce on it. */
+/**
+ * The dialogs of radix lock scrolling with a style element; the policy wants the page's nonce on it. The document keeps
+ * the policy it was loaded with, so a layout that is fetched anew, with a nonce of its own, changes nothing.
+ */
 export function NonceForStyles({ nonce }: { nonce: string }) {
-  if (nonce) setNonce(nonce)
+  if (nonce && !getNonce()) setNonce(nonce)
   return null
 }
