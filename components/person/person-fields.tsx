@@ -3,7 +3,7 @@
 import { Checkbox } from '@/components/ui/checkbox'
 import { Field } from '@/components/ui/field'
 import { Select } from '@/components/ui/select'
-import { roleWords } from '@/components/shell/role-words'
+import { roleHints, roleWords } from '@/components/shell/role-words'
 import { roles, type Role } from '@/lib/auth/actor'
 import type { ClientRow } from '@/lib/client/queries'
 
@@ -22,14 +22,6 @@ type Props = {
   /** Nobody changes their own roles. */
   rolesAreFixed?: boolean
   proposedInitials?: string
-}
-
-const hints: Record<Role, string> = {
-  technician: 'logs readings, photos, cycles',
-  formulator: 'formulas, batches, studies, cases',
-  qa: 'reviews and signs, never own work',
-  manager: 'people, stations, instruments',
-  client: 'own shared studies and reports, nothing else',
 }
 
 export function PersonFields({ draft, onDraft, clients, fields, rolesAreFixed, proposedInitials }: Props) {
@@ -65,7 +57,7 @@ export function PersonFields({ draft, onDraft, clients, fields, rolesAreFixed, p
           <Checkbox
             key={role}
             label={roleWords[role]}
-            hint={hints[role]}
+            hint={roleHints[role]}
             checked={draft.roles.includes(role)}
             disabled={rolesAreFixed}
             onSet={(isHeld) => setRole(role, isHeld)}

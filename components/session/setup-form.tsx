@@ -1,7 +1,9 @@
 'use client'
 
 import { useState, useSyncExternalStore, type FormEvent } from 'react'
+import { roleHints, roleWords } from '@/components/shell/role-words'
 import { Button } from '@/components/ui/button'
+import { Checkbox } from '@/components/ui/checkbox'
 import { ErrorNote } from '@/components/ui/error-note'
 import { Field } from '@/components/ui/field'
 import { Select } from '@/components/ui/select'
@@ -11,10 +13,13 @@ import { ChoosePassword } from './choose-password'
 
 type Answers = Record<'code' | 'labName' | 'timeZone' | 'name' | 'initials' | 'email' | 'password', string>
 
+const besides = ['technician', 'formulator', 'qa'] as const
+
 const none: Answers = { code: '', labName: '', timeZone: '', name: '', initials: '', email: '', password: '' }
 
 export function SetupForm({ timeZones }: { timeZones: string[] }) {
   const [answers, setAnswers] = useState(none)
+  const [roles, setRoles] = useState<(typeof besides)[number][]>([])
   const [isSending, setSending] = useState(false)
   const [error, setError] = useState<unknown>(null)
   const here = useSyncExternalStore(never, zoneOfDevice, () => '')
@@ -39,6 +44,7 @@ export function SetupForm({ timeZones }: { timeZones: string[] }) {
         ...answers,
         timeZone,
         initials,
+        roles,
       })
       window.location.assign('/people')
     } catch (thrown) {
@@ -85,6 +91,21 @@ export function SetupForm({ timeZones }: { timeZones: string[] }) {
         onText={(password) => setAnswers((was) => ({ ...was, password }))}
         error={fields['password']}
       />
+      <fieldset>
+        <legend className="font-600">What this person does besides</legend>
+        <p className="text-13 text-soft">Nobody changes their own roles later; another manager does.</p>
+        {besides.map((role) => (
+          <Checkbox
+            key={role}
+            label={roleWords[role]}
+            hint={roleHints[role]}
+            checked={roles.includes(role)}
+            onSet={(isHeld) =>
+              setRoles((was) => (isHeld ? [...was, role] : was.filter((one) => one !== role)))
+            }
+          />
+        ))}
+      </fieldset>
       <ErrorNote error={error} />
       <Button type="submit" kind="primary" busy={isSending} className="self-start">
         Begin the notebook

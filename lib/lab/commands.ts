@@ -26,7 +26,13 @@ export async function setUpLab(trx: Trx, input: LabToSetUp): Promise<string> {
   await trx.insertInto('lab').values({ id: newId(), name: input.labName, timeZone: input.timeZone }).execute()
   await trx
     .insertInto('person')
-    .values({ id, email: input.email, name: input.name, initials: input.initials, roles: ['manager'] })
+    .values({
+      id,
+      email: input.email,
+      name: input.name,
+      initials: input.initials,
+      roles: [...new Set(input.roles), 'manager' as const],
+    })
     .execute()
   await setPassword(trx, id, input.password)
   await recordEvent(trx, { event: 'lab set up', table: 'person', id })

@@ -13,6 +13,11 @@ export const labToSetUp = z.object({
   initials,
   email,
   password: z.string().min(1, `Choose a password of ${shortestPassword} characters or more.`).max(1000),
+  /** What the first manager does besides: nobody changes their own roles later, and a small lab has few people. */
+  roles: z
+    .array(z.enum(['technician', 'formulator', 'qa']))
+    .max(3)
+    .default([]),
 })
 
 export const labToChange = z.object({ version: z.number().int(), name: labName, timeZone })

@@ -46,17 +46,20 @@ describe('the first manager', () => {
     expect((await attempt(old!)).status).toBe(422)
     expect((await attempt(code!, { timeZone: 'Mars/Olympus' })).status).toBe(422)
     expect((await attempt(code!, { password: 'password1234' })).status).toBe(422)
+    expect((await attempt(code!, { roles: ['client'] })).status).toBe(422)
     // Copied by hand: small letters and missing dashes are taken.
     const typed = code!.toLowerCase().replaceAll('-', ' ')
-    const [first, second] = await Promise.all([attempt(typed), attempt(typed)])
-    expect([first.status, second.status].sort()).toEqual([200, 409])
+    const [first, second] = await Promise.all(
+      [1, 2].map(() => attempt(typed, { roles: ['formulator', 'formulator'] })),
+    )
+    expect([first!.status, second!.status].sort()).toEqual([200, 409])
     expect(await makeFirstCode(t.db)).toBeNull()
     const people = await t.owner
       .selectFrom('person')
       .select(['email', 'roles'])
       .where('isSystem', '=', false)
       .execute()
-    expect(people).toEqual([{ email: 'mara@lab.example', roles: ['manager'] }])
+    expect(people).toEqual([{ email: 'mara@lab.example', roles: ['formulator', 'manager'] }])
     manager = await t.person('manager')
   })
 })
