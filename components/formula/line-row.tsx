@@ -14,6 +14,7 @@ export type LineActs = {
   change: (id: string, next: Partial<TypedLine>, column: string) => void
   pick: (id: string, ingredient: IngredientRow) => void
   add: (line: TypedLine) => void
+  markPhase: (phase: string, isInternal: boolean) => void
   move: (id: string, by: -1 | 1) => void
   remove: (id: string) => void
   grip: StartDrag

@@ -124,7 +124,11 @@ export function LineSheet({
                 isInternal={lines.some((line) => line.phase === phase && line.isInternal)}
                 emulsionType={emulsionType}
                 factsOfPhase={factsOfPhase}
-                onAdd={() => addLine(phase)}
+                writing={{
+                  inside: insideOf(lines.filter((line) => line.phase === phase)),
+                  onInside: (isInternal) => acts.markPhase(phase, isInternal),
+                  onAdd: () => addLine(phase),
+                }}
               />
               {lines
                 .filter((line) => line.phase === phase)
@@ -161,6 +165,11 @@ export function LineSheet({
       </datalist>
     </div>
   )
+}
+
+function insideOf(lines: TypedLine[]): 'all' | 'some' | 'none' {
+  const inside = lines.filter((line) => line.isInternal).length
+  return inside === 0 ? 'none' : inside === lines.length ? 'all' : 'some'
 }
 
 /** After the INCI name: function, was, % w/w, g/mL, per kg, in, acts. */

@@ -13,11 +13,12 @@ type Props = {
   isInternal: boolean
   emulsionType: EmulsionType
   factsOfPhase: (total: PhaseTotal) => FigureFacts
-  onAdd?: () => void
+  /** Where the lines are written: how many of them are marked as inside, and what the phase itself can be told. */
+  writing?: { inside: 'all' | 'some' | 'none'; onInside: (isInternal: boolean) => void; onAdd: () => void }
 }
 
 /** The head of a phase: what it is, its share of the volume, its share by mass. */
-export function PhaseRow({ phase, total, isInternal, emulsionType, factsOfPhase, onAdd }: Props) {
+export function PhaseRow({ phase, total, isInternal, emulsionType, factsOfPhase, writing }: Props) {
   const inner = innerWord(emulsionType)
   const outer = emulsionType === 'water-in-silicone' ? 'silicone' : inner === 'water' ? 'oil' : 'water'
   return (
@@ -36,9 +37,29 @@ export function PhaseRow({ phase, total, isInternal, emulsionType, factsOfPhase,
       <td className="px-2 text-right text-16 font-750">
         {total ? percentText(total.percentThousandths) : ''}
       </td>
-      <td colSpan={4} className="pr-1 text-right">
-        {onAdd ? (
-          <button type="button" onClick={onAdd} className="h-8 px-1 text-14 underline underline-offset-4">
+      <td colSpan={2} />
+      <td className="text-center">
+        {writing ? (
+          <input
+            type="checkbox"
+            aria-label={`All of phase ${phase} is in the internal phase`}
+            title={`All of phase ${phase}`}
+            checked={writing.inside === 'all'}
+            ref={(box) => {
+              if (box) box.indeterminate = writing.inside === 'some'
+            }}
+            onChange={(event) => writing.onInside(event.target.checked)}
+            className="tick align-middle"
+          />
+        ) : null}
+      </td>
+      <td className="pr-1 text-right">
+        {writing ? (
+          <button
+            type="button"
+            onClick={writing.onAdd}
+            className="h-8 px-1 text-14 underline underline-offset-4"
+          >
             Add line<span className="sr-only"> to phase {phase}</span>
           </button>
         ) : null}

@@ -63,6 +63,8 @@ export function useLineActs({ sheet, emulsionType, onLines, onProblem, start }: 
           )
         })
       },
+      markPhase: (phase, isInternal) =>
+        onLines((lines) => lines.map((line) => (line.phase === phase ? { ...line, isInternal } : line))),
       move: (id, by) => onLines((lines) => grouped(moveLine(lines, id, by))),
       remove: (id) => {
         const rows = [...(sheet.current?.querySelectorAll<HTMLElement>('[data-line]') ?? [])]
