@@ -4,9 +4,7 @@ import { useState } from 'react'
 import { Button } from '@/components/ui/button'
 import { Dialog } from '@/components/ui/dialog'
 import { ErrorNote } from '@/components/ui/error-note'
-import { NumberField } from '@/components/ui/number-field'
 import { RadioGroup } from '@/components/ui/radio-group'
-import { readNumber } from '@/components/ui/read-number'
 import { TextArea } from '@/components/ui/text-area'
 import { toast } from '@/components/ui/toast'
 import { newId } from '@/lib/db/id'
@@ -29,20 +27,18 @@ export function ChecksDialog({ formula, check, mayWrite, isDirty, onClose, onAns
   const [id] = useState(newId)
   const [kind, setKind] = useState<string>('answered')
   const [note, setNote] = useState(check.isReopened ? (check.given?.note ?? '') : '')
-  const [value, setValue] = useState(check.value === null ? '' : check.value.toFixed(2))
   const [error, setError] = useState<unknown>(null)
   const [busy, setBusy] = useState(false)
   const fields = error instanceof ClientError ? error.fields : {}
-  const mayAnswer = mayWrite && (check.isAsked || check.asksFor !== null)
+  const mayAnswer = mayWrite && check.isAsked
 
   async function keep() {
     setBusy(true)
     setError(null)
     try {
-      const brought = check.asksFor && value.trim() ? (readNumber(value) ?? value) : null
       await send(formulaAnswersKey(formula.code), 'POST', {
         ...{ id, versionId: formula.versionId, question: check.key, askedAbout: check.askedAbout },
-        ...{ kind, note, value: brought },
+        ...{ kind, note },
       })
       toast(kind === 'answered' ? 'The answer is kept.' : 'The question is set aside.')
       onAnswered()
@@ -86,7 +82,7 @@ export function ChecksDialog({ formula, check, mayWrite, isDirty, onClose, onAns
       </p>
       {check.given ? (
         <p className="border-l-[3px] border-rule pl-3 text-15 [overflow-wrap:anywhere]">
-          {givenText(check.given)}
+          {givenText(check.given, formula.number)}
           {check.isReopened ? (
             <span className="block text-soft">What it rested on has changed since, so it is open again.</span>
           ) : null}
@@ -104,15 +100,6 @@ export function ChecksDialog({ formula, check, mayWrite, isDirty, onClose, onAns
             ]}
             onPick={setKind}
           />
-          {check.asksFor ? (
-            <NumberField
-              label="Target pH"
-              value={value}
-              onText={setValue}
-              error={fields['value']}
-              wrap="w-[140px]"
-            />
-          ) : null}
           <TextArea
             label="Note"
             value={note}
@@ -122,7 +109,7 @@ export function ChecksDialog({ formula, check, mayWrite, isDirty, onClose, onAns
           />
         </>
       ) : null}
-      <ErrorNote error={error && !fields['note'] && !fields['value'] ? error : null} />
+      <ErrorNote error={error && !fields['note'] ? error : null} />
     </Dialog>
   )
 }

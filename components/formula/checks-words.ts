@@ -4,13 +4,18 @@ import { spokenDay } from '@/lib/study/rules/calendar'
 import { listed } from '@/lib/study/rules/words'
 
 /** Under the question: the formula's own answer, a person's, or that it waits; cut where there is little room. */
-export function answerText(check: FormulaCheck, most = Infinity): string {
+export function answerText(check: FormulaCheck, number: number, most = Infinity): string {
   const { given, isAsked, isOpen, isReopened, answer } = check
   if (given && isAsked && !isOpen) {
-    return cut(`${given.kind === 'answered' ? 'Answered' : 'Set aside'} by ${given.by}: ${given.note}`, most)
+    const how = given.kind === 'answered' ? 'Answered' : 'Set aside'
+    return cut(`${how}${earlier(given, number)} by ${given.by}: ${given.note}`, most)
   }
   return cut(isReopened ? `${answer} Answered before, but changed since.` : answer, most)
 }
+
+/** Of an answer that was given on an earlier version and still holds. */
+const earlier = (given: GivenAnswer, number: number) =>
+  given.number === number ? '' : ` on version ${given.number}`
 
 function cut(text: string, most: number): string {
   const whole = withUnits(text)
@@ -22,8 +27,8 @@ export function withUnits(text: string): string {
   return text.replace(/(\d) (%|°C|rpm|min|g\/mL)/g, '$1\u00a0$2')
 }
 
-export function givenText(given: GivenAnswer): string {
-  return `${given.by}, ${spokenDay(given.at.slice(0, 10))}, ${given.kind}: ${given.note}`
+export function givenText(given: GivenAnswer, number: number): string {
+  return `${given.by}, ${spokenDay(given.at.slice(0, 10))}, ${given.kind}${earlier(given, number)}: ${given.note}`
 }
 
 /** Which lines and steps it is about; many of them are counted. */

@@ -2,8 +2,15 @@ import type { FormulaCheck } from '@/lib/formula/rules/checks'
 import { CheckTitle } from './checks-room'
 import { aboutText, answerText } from './checks-words'
 
+type Props = {
+  checks: FormulaCheck[]
+  /** Of the version on screen. */
+  number: number
+  className?: string
+}
+
 /** Questions with a reason each; what neither the formula nor a person answers is open, in the alarm colour. */
-export function Checks({ checks, className }: { checks: FormulaCheck[]; className?: string }) {
+export function Checks({ checks, number, className }: Props) {
   return (
     <ul className={className ?? 'flex flex-col gap-4'}>
       {checks.map((check) => (
@@ -22,7 +29,7 @@ export function Checks({ checks, className }: { checks: FormulaCheck[]; classNam
             <CheckTitle check={check} />
           </p>
           <p className={`[overflow-wrap:anywhere] ${check.isOpen ? 'font-650 text-alarm' : ''}`}>
-            {answerText(check)}
+            {answerText(check, number)}
           </p>
           <p className="text-14 text-soft [overflow-wrap:anywhere]">
             {check.reason} {aboutText(check)} <span className="whitespace-nowrap">[{check.mark}]</span>

@@ -3,6 +3,7 @@
 import { FigureDetails } from '@/components/ui/figure-details'
 import type { DifferencePage } from '@/lib/formula/queries/get-difference'
 import { grouped, moneyText, percentText } from '@/lib/formula/rules/numbers'
+import { targetPhText } from '@/lib/formula/rules/target-ph'
 import type { FigureFacts } from '@/lib/science/methods/method'
 import { costFacts, insideFacts, oilWaterFacts, oilWaterText, totalFacts } from './formula-facts'
 
@@ -10,7 +11,8 @@ type Side = { lines: DifferencePage['from']['lines']; own: DifferencePage['diffe
 type Row = {
   name: string
   text: (side: Side) => string
-  facts: (side: Side) => FigureFacts
+  /** Null for what is typed, not computed. */
+  facts: ((side: Side) => FigureFacts) | null
   /** The second less the first, with its sign; empty where one is not there. */
   moved: (from: Side['own'], to: Side['own']) => string
 }
@@ -52,7 +54,18 @@ const rows: Row[] = [
     facts: ({ lines, own }) => costFacts(lines, own, `${moneyText(own.costCentsPerKg ?? 0)} per kg`),
     moved: (a, b) => between(a.costCentsPerKg, b.costCentsPerKg, (size) => grouped(size / 100, 2)),
   },
+  {
+    name: 'target pH',
+    text: ({ own }) => targetPhText(own.targetPh),
+    facts: null,
+    moved: (a, b) => (targetPhText(a.targetPh) === targetPhText(b.targetPh) ? 'same' : 'another'),
+  },
 ]
+
+function Figure({ row, side }: { row: Row; side: Side }) {
+  const { facts } = row
+  return facts ? <FigureDetails figure={row.text(side)} facts={() => facts(side)} /> : row.text(side)
+}
 
 /** What the changes come to: each figure of both, and by how much it moved. */
 export function Consequences({ page, names }: { page: DifferencePage; names: [string, string] }) {
@@ -90,7 +103,7 @@ export function Consequences({ page, names }: { page: DifferencePage; names: [st
                 className={`pr-3 text-right whitespace-nowrap ${index ? 'font-700' : 'text-soft'}`}
               >
                 {row.text(side) ? (
-                  <FigureDetails figure={row.text(side)} facts={() => row.facts(side)} />
+                  <Figure row={row} side={side} />
                 ) : (
                   <span className="text-13 font-430 text-soft">not known</span>
                 )}

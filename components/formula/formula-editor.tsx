@@ -10,6 +10,7 @@ import { formulaTotals, phaseTotals } from '@/lib/formula/rules/totals'
 import { readStep } from '@/lib/formula/rules/typed'
 import { toast } from '@/components/ui/toast'
 import { ChecksRoom } from './checks-room'
+import type { Draft } from './read-draft'
 import { DraftBar } from './draft-bar'
 import { FormulaActs } from './formula-acts'
 import { LinesPart } from './lines-part'
@@ -80,7 +81,7 @@ export function FormulaEditor({ formula, part, personId, mayWrite, isClient, onR
   return (
     <div>
       <Heading
-        crumb={<Crumb formula={formula} name={draft.name} emulsionType={draft.emulsionType} />}
+        crumb={<Crumb formula={formula} draft={draft} />}
         headline={
           <>
             <b>{finding.strong}</b>
@@ -117,7 +118,7 @@ export function FormulaEditor({ formula, part, personId, mayWrite, isClient, onR
             />
           ) : null}
           {part === 'process' ? (
-            <ProcessPart handle={handle} isOpen={isOpen} steps={steps} checks={checks} />
+            <ProcessPart {...{ handle, isOpen, steps, checks }} number={formula.number} />
           ) : null}
           {part === 'batches' ? <MadePart formula={formula} /> : null}
           {part === 'versions' ? <VersionsPart formula={formula} /> : null}
@@ -127,20 +128,14 @@ export function FormulaEditor({ formula, part, personId, mayWrite, isClient, onR
   )
 }
 
-function Crumb({
-  formula,
-  name,
-  emulsionType,
-}: {
-  formula: FormulaPage
-  name: string
-  emulsionType: string
-}) {
+function Crumb({ formula, draft }: { formula: FormulaPage; draft: Draft }) {
+  const { name, emulsionType, targetPh } = draft
   const made = formula.versions.filter((version) => version.batchCodes.length).at(-1)
   return (
     <>
       <Link href="/formulas">Formulas</Link> · <b className="font-650 text-ink">{formula.code}</b>, {name},{' '}
-      {emulsionType}. Version {formula.number},{' '}
+      {emulsionType}
+      {targetPh.trim() ? `, target pH ${targetPh.trim()}` : ''}. Version {formula.number},{' '}
       {formula.state === 'draft' ? `a draft by ${formula.createdBy}` : 'locked'}
       {made ? `; version ${made.number} was made as batch ${made.batchCodes.at(-1)}` : ''}
     </>

@@ -18,10 +18,12 @@ type Props = {
   before: FormulaPage['before']
   checks: FormulaCheck[]
   emulsionType: EmulsionType
+  /** Of the version on screen. */
+  number: number
 }
 
 /** What is inside: the level, a cut through the emulsion to scale, and the questions that point into it. */
-export function InsideDrawing({ totals, amounts, before, checks, emulsionType }: Props) {
+export function InsideDrawing({ totals, amounts, before, checks, emulsionType, number }: Props) {
   const { internalVolumePercent: volume, internalMassPercent: mass } = totals
   if (volume === null || mass === null) {
     return (
@@ -71,7 +73,7 @@ export function InsideDrawing({ totals, amounts, before, checks, emulsionType }:
           questions={pointing.map((check) => ({
             id: check.key,
             title: <CheckTitle check={check} />,
-            answer: answerText(check, mostBeside),
+            answer: answerText(check, number, mostBeside),
             reason: `${check.reason} [${check.mark}]`,
             isOpen: check.isOpen,
             at: check.at ?? 'film',

@@ -99,8 +99,10 @@ export function LinesPart({ formula, handle, isOpen, totals, phases, checks, bef
         before={formula.before}
         checks={checks}
         emulsionType={draft.emulsionType}
+        number={formula.number}
       />
       <Checks
+        number={formula.number}
         checks={checks.filter((check) => check.at === null || totals.internalVolumePercent === null)}
         className="min-w-0 gap-x-8 sm:columns-2 lg:pl-[120px] xl:col-start-1 xl:row-start-2 [&>li]:mb-4"
       />
@@ -116,7 +118,7 @@ function orFirst(lines: TypedLine[], versionId: string): TypedLine[] {
 function Facts({ handle }: { handle: DraftHandle }) {
   const { draft, change, problems } = handle
   return (
-    <div className="mt-6 grid gap-4 sm:grid-cols-[1fr_200px]">
+    <div className="mt-6 grid gap-4 sm:grid-cols-[1fr_200px_180px]">
       <Field
         label="Name"
         value={draft.name}
@@ -131,9 +133,17 @@ function Facts({ handle }: { handle: DraftHandle }) {
         onPick={(type) => change(() => ({ emulsionType: type as EmulsionType }))}
       />
       <Field
+        label="Target pH"
+        value={draft.targetPh}
+        error={problems.targetPh}
+        hint="5.50, or 5.20 to 5.80."
+        inputMode="decimal"
+        onText={(targetPh) => change(() => ({ targetPh }), 'targetPh')}
+      />
+      <Field
         label="Why this version"
         value={draft.note}
-        wrap="sm:col-span-2"
+        wrap="sm:col-span-3"
         onText={(note) => change(() => ({ note }), 'note')}
       />
     </div>

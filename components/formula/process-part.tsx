@@ -8,9 +8,15 @@ import { ReadSteps } from './read-steps'
 import { StepSheet, type ChangeSteps } from './step-sheet'
 import type { DraftHandle } from './use-draft'
 
-type Props = { handle: DraftHandle; isOpen: boolean; steps: FormulaStep[]; checks: FormulaCheck[] }
+type Props = {
+  handle: DraftHandle
+  number: number
+  isOpen: boolean
+  steps: FormulaStep[]
+  checks: FormulaCheck[]
+}
 
-export function ProcessPart({ handle, isOpen, steps, checks }: Props) {
+export function ProcessPart({ handle, number, isOpen, steps, checks }: Props) {
   const { change } = handle
   const onSteps: ChangeSteps = useCallback(
     (next, at) => change((now) => ({ steps: next(now.steps) }), at),
@@ -28,7 +34,7 @@ export function ProcessPart({ handle, isOpen, steps, checks }: Props) {
       ) : (
         <ReadSteps steps={steps} />
       )}
-      <Checks checks={checks} />
+      <Checks checks={checks} number={number} />
     </div>
   )
 }

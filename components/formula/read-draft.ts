@@ -9,12 +9,14 @@ import {
   type TypedLine,
   type TypedStep,
 } from '@/lib/formula/rules/typed'
+import { readTargetPh, targetPhColumns } from '@/lib/formula/rules/target-ph'
 import type { EmulsionType } from '@/lib/formula/schema'
 
 export type Draft = {
   version: number
   name: string
   emulsionType: EmulsionType
+  targetPh: string
   note: string
   lines: TypedLine[]
   steps: TypedStep[]
@@ -23,6 +25,7 @@ export type Draft = {
 export type Problems = {
   name?: string
   emulsionType?: string
+  targetPh?: string
   lines: Record<string, LineErrors>
   steps: Record<string, StepErrors>
 }
@@ -46,11 +49,17 @@ export function readDraft(draft: Draft) {
     if (!step) problems.steps[typed.id] = errors
     return step ?? []
   })
-  const isWhole = !problems.name && lines.length === typedLines.length && steps.length === typedSteps.length
+  const ph = readTargetPh(draft.targetPh)
+  if ('sentence' in ph) problems.targetPh = ph.sentence
+  const isRead = !problems.name && !problems.targetPh
+  const isWhole = isRead && lines.length === typedLines.length && steps.length === typedSteps.length
   const { name, emulsionType, note } = draft
   return {
     problems,
-    body: isWhole ? { name, emulsionType, note, lines, steps } : null,
+    body:
+      isWhole && 'target' in ph
+        ? { name, emulsionType, ...targetPhColumns(ph.target), note, lines, steps }
+        : null,
     tidy: isWhole ? { lines: typedLines, steps: typedSteps } : null,
   }
 }
@@ -70,6 +79,7 @@ export function fromFields(fields: Record<string, string>, draft: Draft): Proble
     const row = rows?.[Number(index)]
     const field = names[name] ?? name
     if (part === 'name' || part === 'emulsionType') problems[part] = sentence
+    else if (part === 'targetPhLow' || part === 'targetPhHigh') problems.targetPh = sentence
     else if (row && part === 'lines')
       problems.lines[row.id] = { ...problems.lines[row.id], [field]: sentence }
     else if (row && part === 'steps')

@@ -7,6 +7,7 @@ import type { FormulaPage } from '@/lib/formula/queries/get-formula'
 import { formulaChecks, type FormulaCheck } from '@/lib/formula/rules/checks'
 import type { CheckLine } from '@/lib/formula/rules/checks/check'
 import { readDecimal, readScaled } from '@/lib/formula/rules/numbers'
+import { readTargetPh } from '@/lib/formula/rules/target-ph'
 import { isBlankLine, remainderOf, type TypedLine } from '@/lib/formula/rules/typed'
 import type { EmulsionType, FormulaStep } from '@/lib/formula/schema'
 import type { IngredientFacts } from '@/lib/ingredient/queries'
@@ -15,7 +16,7 @@ import { ingredientFactsKey } from '@/lib/ingredient/schema'
 /** The questions to the draft on screen; what the book knows of an ingredient picked since is fetched. */
 export function useChecks(
   { ground }: Pick<FormulaPage, 'ground'>,
-  draft: { emulsionType: EmulsionType; lines: TypedLine[] },
+  draft: { emulsionType: EmulsionType; targetPh: string; lines: TypedLine[] },
   steps: readonly FormulaStep[],
 ): FormulaCheck[] {
   const lines = useMemo(() => checkLines(draft.lines), [draft.lines])
@@ -30,10 +31,10 @@ export function useChecks(
     const more = Object.fromEntries((data ?? []).map((row) => [row.id, row]))
     return { ...ground, facts: { ...more, ...ground.facts } }
   }, [data, ground])
-  return useMemo(
-    () => formulaChecks(draft.emulsionType, lines, steps, known),
-    [draft.emulsionType, lines, steps, known],
-  )
+  return useMemo(() => {
+    const read = readTargetPh(draft.targetPh)
+    return formulaChecks(draft.emulsionType, lines, steps, known, 'target' in read ? read.target : null)
+  }, [draft.emulsionType, draft.targetPh, lines, steps, known])
 }
 
 /** As they would be saved; a density that cannot be read is one that is missing. */

@@ -5,6 +5,7 @@ import { newId } from '@/lib/db/id'
 import { ClientError, send } from '@/lib/http/fetcher'
 import type { FormulaPage } from '@/lib/formula/queries/get-formula'
 import { begin, record, redo, undo, type History } from '@/lib/formula/rules/history'
+import { targetPhOf, targetPhText } from '@/lib/formula/rules/target-ph'
 import { readAmounts, typeLine, typeStep, type TypedLine, type TypedStep } from '@/lib/formula/rules/typed'
 import { fromFields, noProblems, readDraft, type Draft } from './read-draft'
 
@@ -93,12 +94,13 @@ export type DraftHandle = ReturnType<typeof useDraft>
 function draftOf(formula: FormulaPage): Draft {
   const { version, name, emulsionType, note } = formula
   const lines = formula.lines.map(typeLine)
-  return { version, name, emulsionType, note, lines, steps: formula.steps.map(typeStep) }
+  const targetPh = targetPhText(targetPhOf(formula))
+  return { version, name, emulsionType, targetPh, note, lines, steps: formula.steps.map(typeStep) }
 }
 
 /** What counts as changed; the version is not a person's doing. */
-function textOf({ name, emulsionType, note, lines, steps }: Draft): string {
-  return JSON.stringify([name, emulsionType, note, lines, steps].flat().map((part) => normal(part)))
+function textOf({ name, emulsionType, targetPh, note, lines, steps }: Draft): string {
+  return JSON.stringify([name, emulsionType, targetPh, note, lines, steps].flat().map((part) => normal(part)))
 }
 
 function normal(part: string | TypedLine | TypedStep): unknown {
@@ -109,7 +111,10 @@ function normal(part: string | TypedLine | TypedStep): unknown {
 function readKept(place: string): Draft | null {
   try {
     const kept = JSON.parse(localStorage.getItem(place) ?? 'null') as Draft | null
-    return kept && Array.isArray(kept.lines) && Array.isArray(kept.steps) ? kept : null
+    // One that was kept before there was a target pH has none.
+    return kept && Array.isArray(kept.lines) && Array.isArray(kept.steps)
+      ? { ...kept, targetPh: kept.targetPh ?? '' }
+      : null
   } catch {
     return null
   }

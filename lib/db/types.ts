@@ -29,6 +29,7 @@ export interface Batch {
   id: string
   madeAt: string | null
   note: Generated<string>
+  protocolVersionId: string | null
   sizeG: Numeric
   state: Generated<string>
   testedAt: string | null
@@ -52,6 +53,21 @@ export interface BatchJar {
   supersedes: string | null
   tareG: Numeric
   torqueNm: Numeric | null
+}
+
+export interface BatchPhoto {
+  batchId: string
+  bytes: number
+  height: number
+  id: string
+  note: Generated<string>
+  originalName: Generated<string>
+  recordedAt: Generated<string>
+  sha256: string
+  takenAt: string
+  takenBy: string
+  type: string
+  width: number
 }
 
 export interface BatchPortion {
@@ -232,6 +248,9 @@ export interface FormulaAnswer {
   kind: string
   note: string
   question: string
+  /**
+   * The target pH in answers given before it became a field of the version
+   */
   value: Numeric | null
 }
 
@@ -270,6 +289,8 @@ export interface FormulaVersion {
   note: Generated<string>
   number: number
   state: Generated<string>
+  targetPhHigh: Numeric | null
+  targetPhLow: Numeric | null
   version: Generated<number>
 }
 
@@ -657,6 +678,7 @@ export interface TrailSeal {
 export interface DB {
   batch: Batch
   batchJar: BatchJar
+  batchPhoto: BatchPhoto
   batchPortion: BatchPortion
   batchReading: BatchReading
   batchStep: BatchStep

@@ -1,7 +1,7 @@
 import type { Actor } from '@/lib/auth/actor'
 import type { Trx } from '@/lib/db/client'
 import { formulaChecks, type FormulaCheck } from '@/lib/formula/rules/checks'
-import type { Ground } from '@/lib/formula/rules/checks/check'
+import { targetPhOf } from '@/lib/formula/rules/target-ph'
 import type { EmulsionType } from '@/lib/formula/schema'
 import { refuse } from '@/lib/http/errors'
 import { getGround } from './queries'
@@ -11,17 +11,12 @@ import type { FormulaAnswerInput } from './schema'
  * Answers a question of a version, or sets it aside, with a note. Kept beside what the question rested on, so that a
  * later change of that opens it again. A locked version is answered as well: its questions do not end with the batch.
  */
-export async function answerQuestion(
-  trx: Trx,
-  actor: Actor,
-  code: string,
-  input: FormulaAnswerInput,
-  now: string,
-) {
+export async function answerQuestion(trx: Trx, actor: Actor, code: string, input: FormulaAnswerInput) {
   const version = await trx
     .selectFrom('formulaVersion')
     .innerJoin('formula', 'formula.id', 'formulaVersion.formulaId')
     .select(['formula.id as formulaId', 'formula.emulsionType', 'formulaVersion.number'])
+    .select(['formulaVersion.targetPhLow', 'formulaVersion.targetPhHigh'])
     .where('formulaVersion.id', '=', input.versionId)
     .where('formula.code', '=', code)
     .forShare()
@@ -29,19 +24,17 @@ export async function answerQuestion(
   if (!version) throw refuse.notFound(`${code} has no such version. Load the page again.`)
   const same = await findSame(trx, input)
   if (same) return same
-  const ground = await getGround(trx, { formulaId: version.formulaId, versionId: input.versionId })
-  const ask = await askerOf(trx, input.versionId, version.emulsionType as EmulsionType)
-  const check = ask(ground).find((one) => one.key === input.question)
-  refuseUnasked(check, input, `version ${version.number} of ${code}`)
-  // An answer that brings a number changes what the question rests on, and holds for what it rests on then.
-  const brought = input.value === null ? null : { ...answerOf(input, actor, now), askedAbout: '' }
-  const then = brought ? ask({ ...ground, answers: [...ground.answers, brought] }) : null
-  const askedAbout =
-    then?.find((one) => one.key === input.question)?.askedAbout ?? check?.askedAbout ?? input.askedAbout
-  const { id, versionId: formulaVersionId, question, kind, note, value } = input
+  const { formulaId, number } = version
+  const ground = await getGround(trx, { formulaId, versionId: input.versionId, number })
+  const { lines, steps } = await linesAndSteps(trx, input.versionId)
+  const type = version.emulsionType as EmulsionType
+  const checks = formulaChecks(type, lines, steps, ground, targetPhOf(version))
+  const check = checks.find((one) => one.key === input.question)
+  refuseUnasked(check, input, `version ${number} of ${code}`)
+  const { id, versionId: formulaVersionId, question, kind, note, askedAbout } = input
   await trx
     .insertInto('formulaAnswer')
-    .values({ id, formulaVersionId, question, kind, note, value, askedAbout, answeredBy: actor.personId })
+    .values({ id, formulaVersionId, question, kind, note, askedAbout, answeredBy: actor.personId })
     .execute()
   return { id, question, kind }
 }
@@ -60,8 +53,8 @@ async function findSame(trx: Trx, input: FormulaAnswerInput) {
   return { id: same.id, question: same.question, kind: same.kind }
 }
 
-/** The questions to a version as it is saved, for whatever ground. */
-async function askerOf(trx: Trx, versionId: string, type: EmulsionType) {
+/** A version as it is saved. */
+async function linesAndSteps(trx: Trx, versionId: string) {
   const lines = await trx
     .selectFrom('formulaLine')
     .select(['id', 'phase', 'ingredientId', 'inciName', 'function', 'percentThousandths', 'density'])
@@ -75,7 +68,7 @@ async function askerOf(trx: Trx, versionId: string, type: EmulsionType) {
     .where('formulaVersionId', '=', versionId)
     .orderBy('position')
     .execute()
-  return (ground: Ground) => formulaChecks(type, lines, steps, ground)
+  return { lines, steps }
 }
 
 function refuseUnasked(check: FormulaCheck | undefined, input: FormulaAnswerInput, what: string) {
@@ -86,14 +79,7 @@ function refuseUnasked(check: FormulaCheck | undefined, input: FormulaAnswerInpu
       { question: check.key, answer: check.answer },
     )
   }
-  if (!check.isAsked && !check.asksFor) {
+  if (!check.isAsked) {
     throw refuse.conflict(`${what} answers "${check.question}" itself: ${check.answer}`)
   }
-  if (input.value !== null && !check.asksFor) {
-    throw refuse.invalid('This question asks for no number.', { value: 'This question asks for no number.' })
-  }
-}
-
-function answerOf({ question, kind, note, value }: FormulaAnswerInput, { initials }: Actor, at: string) {
-  return { question, kind, note, value, by: initials, at }
 }

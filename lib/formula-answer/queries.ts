@@ -9,23 +9,26 @@ const mostBatches = 30
 /** What the questions to a version go by beside its lines and steps: five statements, whatever its size. */
 export async function getGround(
   db: Db | Trx,
-  { formulaId, versionId }: { formulaId: string; versionId: string },
+  { formulaId, versionId, number }: { formulaId: string; versionId: string; number: number },
 ): Promise<Ground> {
   const [facts, answers, borne] = await Promise.all([
     listFactsOfVersion(db, versionId),
-    listAnswers(db, versionId),
+    listAnswers(db, formulaId, number),
     listBorne(db, formulaId),
   ])
   return { facts: Object.fromEntries(facts.map((row) => [row.id, row])), answers, borne }
 }
 
-async function listAnswers(db: Db | Trx, versionId: string): Promise<GivenAnswer[]> {
+/** Of this version and of those before it: what rests on nothing that changed is answered still. */
+async function listAnswers(db: Db | Trx, formulaId: string, upTo: number): Promise<GivenAnswer[]> {
   const rows = await db
     .selectFrom('formulaAnswer')
+    .innerJoin('formulaVersion', 'formulaVersion.id', 'formulaAnswer.formulaVersionId')
     .innerJoin('person', 'person.id', 'formulaAnswer.answeredBy')
-    .select(['formulaAnswer.question', 'formulaAnswer.kind', 'formulaAnswer.note', 'formulaAnswer.value'])
+    .select(['formulaAnswer.question', 'formulaAnswer.kind', 'formulaAnswer.note', 'formulaVersion.number'])
     .select(['formulaAnswer.askedAbout', 'formulaAnswer.answeredAt as at', 'person.initials as by'])
-    .where('formulaAnswer.formulaVersionId', '=', versionId)
+    .where('formulaVersion.formulaId', '=', formulaId)
+    .where('formulaVersion.number', '<=', upTo)
     .orderBy('formulaAnswer.answeredAt')
     .orderBy('formulaAnswer.id')
     .execute()

@@ -14,13 +14,6 @@ export const formulaAnswerInput = z.object({
     .trim()
     .min(1, 'Say why in a few words: the next one who reads it was not there.')
     .max(1000, 'A note has at most 1000 signs.'),
-  /** The target pH, where that is asked for. */
-  value: z
-    .number('Give the pH as a number, such as 5.5.')
-    .min(0, 'A pH is not below 0 here.')
-    .max(14, 'A pH is at most 14 here.')
-    .nullable()
-    .default(null),
   /** What the question rested on when it was on screen; another is refused with 412. */
   askedAbout: z.string().max(200_000),
 })

@@ -85,30 +85,53 @@ const steps = z
   .max(60, 'A formula has at most 60 process steps.')
   .refine(isOnce, 'A step is in this formula twice. Load the page again.')
 const note = text(2000).default('')
+const phEnd = z
+  .number('Type the pH as 5.50, or as a range such as 5.20 to 5.80.')
+  .min(0, 'A pH is not below 0 here.')
+  .max(14, 'A pH is at most 14 here.')
+  .nullable()
+  .default(null)
+/** The pH it is meant to have; one value where both are the same. */
+const targetPh = { targetPhLow: phEnd, targetPhHigh: phEnd }
+const isPhRange = {
+  path: ['targetPhLow'],
+  error: 'The range of the target pH begins with its lower end. Give both ends, or neither.',
+}
+const hasPhRange = ({
+  targetPhLow: low,
+  targetPhHigh: high,
+}: Record<keyof typeof targetPh, number | null>) =>
+  low === null || high === null ? low === high : low <= high
 
-export const createFormulaInput = z.object({
-  id: z.uuid(),
-  versionId: z.uuid(),
-  code: formulaCode,
-  name,
-  emulsionType,
-  clientId: z.uuid().nullable().default(null),
-  note,
-  lines: lines.default([]),
-  steps: steps.default([]),
-})
+export const createFormulaInput = z
+  .object({
+    id: z.uuid(),
+    versionId: z.uuid(),
+    code: formulaCode,
+    name,
+    emulsionType,
+    clientId: z.uuid().nullable().default(null),
+    note,
+    ...targetPh,
+    lines: lines.default([]),
+    steps: steps.default([]),
+  })
+  .refine(hasPhRange, isPhRange)
 export type CreateFormulaInput = z.infer<typeof createFormulaInput>
 
-export const saveFormulaInput = z.object({
-  versionId: z.uuid(),
-  /** The version of the draft that was on screen; an older one is refused with 412. */
-  version: z.number().int().min(1),
-  name,
-  emulsionType,
-  note,
-  lines,
-  steps,
-})
+export const saveFormulaInput = z
+  .object({
+    versionId: z.uuid(),
+    /** The version of the draft that was on screen; an older one is refused with 412. */
+    version: z.number().int().min(1),
+    name,
+    emulsionType,
+    note,
+    ...targetPh,
+    lines,
+    steps,
+  })
+  .refine(hasPhRange, isPhRange)
 export type SaveFormulaInput = z.infer<typeof saveFormulaInput>
 
 export const newVersionInput = z.object({ id: z.uuid(), fromVersionId: z.uuid(), note })

@@ -1,10 +1,13 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { POST as MAKE } from '@/app/api/batches/route'
 import { POST as ANSWER } from '@/app/api/formulas/[code]/answers/route'
 import { GET, PUT } from '@/app/api/formulas/[code]/route'
+import { POST as NEXT } from '@/app/api/formulas/[code]/versions/route'
 import { POST as CREATE } from '@/app/api/formulas/route'
 import { POST as ADD } from '@/app/api/ingredients/route'
 import { newId } from '@/lib/db/id'
 import { formulaChecks } from '@/lib/formula/rules/checks'
+import { targetPhOf } from '@/lib/formula/rules/target-ph'
 import type { FormulaPage } from '@/lib/formula/queries/get-formula'
 import { call } from '../support/call'
 import { testDatabase, type Signed, type TestDatabase } from '../support/database'
@@ -42,8 +45,8 @@ async function newCream(code: string) {
 
 const load = async (code: string): Promise<FormulaPage> =>
   (await call(GET, { cookie: lena.cookie, params: { code } })).body
-const checksOf = ({ emulsionType, lines, steps, ground }: FormulaPage) =>
-  formulaChecks(emulsionType, lines, steps, ground)
+const checksOf = (page: FormulaPage) =>
+  formulaChecks(page.emulsionType, page.lines, page.steps, page.ground, targetPhOf(page))
 const checkOf = async (code: string, key: string) =>
   checksOf(await load(code)).find((check) => check.key === key)
 
@@ -62,13 +65,29 @@ const kept = (versionId: string) =>
     .execute()
 
 /** The draft with one share changed, as the editor saves it. */
-async function change(code: string, inciName: string, percent: number) {
-  const { versionId, version, name, emulsionType, note, lines, steps } = await load(code)
+async function change(code: string, inciName: string, percent: number, more: object = {}) {
+  const { versionId, version, name, emulsionType, note, lines, steps, ...page } = await load(code)
+  const { targetPhLow, targetPhHigh } = page
   const changed = lines.map(({ formulaVersionId: _, ...row }) =>
     row.inciName === inciName ? { ...row, percentThousandths: percent * 1000 } : row,
   )
-  const body = { versionId, version, name, emulsionType, note, steps, lines: changed }
-  const saved = await call(PUT, { cookie: lena.cookie, method: 'PUT', params: { code }, body })
+  const body = {
+    versionId,
+    version,
+    name,
+    emulsionType,
+    note,
+    steps,
+    lines: changed,
+    targetPhLow,
+    targetPhHigh,
+  }
+  const saved = await call(PUT, {
+    cookie: lena.cookie,
+    method: 'PUT',
+    params: { code },
+    body: { ...body, ...more },
+  })
   expect(saved.status, JSON.stringify(saved.body)).toBe(200)
 }
 
@@ -125,15 +144,40 @@ describe('answering a question of a formula', () => {
     expect(await kept(versionId)).toEqual([])
   })
 
-  it('brings the target pH, and a preservative outside its range stays asked until a note says why', async () => {
+  it('a preservative outside the target pH of the formula stays asked until a note says why', async () => {
     await newCream('Q5')
-    expect(await checkOf('Q5', 'ph')).toMatchObject({ isOpen: true, asksFor: 'target pH' })
-    expect((await answer('Q5', await answerBody('Q5', 'ph', { value: 4.5 }))).status).toBe(200)
-    expect(await checkOf('Q5', 'ph')).toMatchObject({ isOpen: false, isAsked: false, value: 4.5 })
-    const outside = await answer('Q5', await answerBody('Q5', 'ph', { value: 6, note: 'A second one helps' }))
+    expect(await checkOf('Q5', 'ph')).toMatchObject({ isOpen: true })
+    await change('Q5', 'Aqua', 85.6, { targetPhLow: 4.5, targetPhHigh: 4.5 })
+    expect(await checkOf('Q5', 'ph')).toMatchObject({ isOpen: false, isAsked: false })
+    await change('Q5', 'Aqua', 85.6, { targetPhLow: 4.5, targetPhHigh: 6 })
+    expect((await checkOf('Q5', 'ph'))?.answer).toContain('target 4.50 to 6.00')
+    const outside = await answer('Q5', await answerBody('Q5', 'ph', { note: 'A second one helps' }))
     expect(outside.status, JSON.stringify(outside.body)).toBe(200)
-    expect(await checkOf('Q5', 'ph')).toMatchObject({ isOpen: false, isAsked: true, value: 6 })
-    expect((await checkOf('Q5', 'ph'))?.answer).toContain('target 6.00')
+    expect(await checkOf('Q5', 'ph')).toMatchObject({ isOpen: false, isAsked: true })
+  })
+
+  it('carries over to the next version and names where it was given; what changed there is open again', async () => {
+    const { versionId } = await newCream('Q10')
+    for (const question of ['salt', 'gel'])
+      expect((await answer('Q10', await answerBody('Q10', question))).status).toBe(200)
+    await change('Q10', 'Aqua', 85.6, { targetPhLow: 4.2, targetPhHigh: 4.8 })
+    const batch = { id: newId(), formulaVersionId: versionId, sizeG: 1000 }
+    expect((await call(MAKE, { cookie: lena.cookie, body: batch })).status).toBe(200)
+    const next = { id: newId(), fromVersionId: versionId, note: '' }
+    expect((await call(NEXT, { cookie: lena.cookie, params: { code: 'Q10' }, body: next })).status).toBe(200)
+    expect(await load('Q10')).toMatchObject({ number: 2, targetPhLow: 4.2, targetPhHigh: 4.8 })
+    const carried = { isOpen: false, given: { number: 1, by: lena.actor.initials, note: 'Sugar holds it' } }
+    expect(await checkOf('Q10', 'salt')).toMatchObject(carried)
+    expect(await checkOf('Q10', 'gel')).toMatchObject(carried)
+    await change('Q10', 'Aqua', 86)
+    expect(await checkOf('Q10', 'salt')).toMatchObject({ isOpen: true, isReopened: true })
+    expect((await answer('Q10', await answerBody('Q10', 'salt', { note: 'Anew' }))).status).toBe(200)
+    expect(await checkOf('Q10', 'salt')).toMatchObject({ isOpen: false, given: { number: 2, note: 'Anew' } })
+    // The first version keeps its own.
+    const first = (await call(GET, { cookie: lena.cookie, params: { code: 'Q10' }, query: { version: '1' } }))
+      .body
+    const check = checksOf(first).find((one) => one.key === 'salt')
+    expect(check).toMatchObject({ isOpen: false, given: { number: 1, note: 'Sugar holds it' } })
   })
 
   it('refuses what is not asked, what the formula answers itself, and empty or absurd answers', async () => {
@@ -142,10 +186,9 @@ describe('answering a question of a formula', () => {
     expect((await answer('Q6', { ...body, question: 'finish' })).status).toBe(409)
     const own = await answer('Q6', await answerBody('Q6', 'preservative'))
     expect([own.status, own.body.error.sentence]).toEqual([409, expect.stringContaining('itself')])
-    const empty = await answer('Q6', { ...body, note: '  ', kind: 'perhaps', question: 'moon', value: 20 })
+    const empty = await answer('Q6', { ...body, note: '  ', kind: 'perhaps', question: 'moon' })
     expect(empty.status).toBe(422)
-    expect(Object.keys(empty.body.error.fields).sort()).toEqual(['kind', 'note', 'question', 'value'])
-    expect((await answer('Q6', { ...body, value: 5 })).status).toBe(422)
+    expect(Object.keys(empty.body.error.fields).sort()).toEqual(['kind', 'note', 'question'])
     expect((await answer('Q6', { ...body, versionId: newId() })).status).toBe(404)
     expect((await answer('Q99', body)).status).toBe(404)
   })

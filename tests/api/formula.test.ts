@@ -52,9 +52,10 @@ const load = async (code: string, query: Record<string, string> = {}) =>
   (await call(GET, { cookie: lena.cookie, params: { code }, query })).body
 
 async function draftOf(code: string): Promise<SaveFormulaInput> {
-  const { versionId, version, name, emulsionType, note, lines, steps } = await load(code)
+  const { versionId, version, name, emulsionType, note, lines, steps, ...page } = await load(code)
+  const { targetPhLow, targetPhHigh } = page
   const plain = lines.map(({ formulaVersionId: _, ...rest }: { formulaVersionId: string }) => rest)
-  return { versionId, version, name, emulsionType, note, lines: plain, steps }
+  return { versionId, version, name, emulsionType, targetPhLow, targetPhHigh, note, lines: plain, steps }
 }
 
 const trailOf = (requestId: string | null) =>

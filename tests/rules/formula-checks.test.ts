@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { formulaChecks } from '@/lib/formula/rules/checks'
 import { noGround, type CheckKey, type CheckLine, type Ground } from '@/lib/formula/rules/checks/check'
+import type { TargetPh } from '@/lib/formula/rules/target-ph'
 import type { EmulsionType } from '@/lib/formula/schema'
 import type { IngredientFacts } from '@/lib/ingredient/queries'
 import { neutralisedPercent } from '@/lib/science/neutralisation'
@@ -50,7 +51,8 @@ const ask = (
   steps: ReturnType<typeof step>[],
   on: Ground = noGround,
   type: EmulsionType = 'water-in-oil',
-) => formulaChecks(type, lines, steps, on)
+  target: TargetPh | null = null,
+) => formulaChecks(type, lines, steps, on, target)
 const one = (checks: ReturnType<typeof formulaChecks>, key: CheckKey) =>
   checks.find((check) => check.key === key)
 const open = (checks: ReturnType<typeof formulaChecks>) =>
@@ -205,19 +207,8 @@ describe('what batches have borne', () => {
 describe('preservative', () => {
   const benzoate = line('Sodium Benzoate', 'preservative', 0.4, true)
   const range = { 'Sodium Benzoate': facts({ phLow: 2, phHigh: 5 }) }
-  const target = (value: number | null) => ({
-    ...{
-      question: 'ph',
-      kind: 'answered' as const,
-      note: 'Brief',
-      value,
-      askedAbout: '',
-      by: 'LB',
-      at: '2026-01-01',
-    },
-  })
-  const ph = (answers: Ground['answers']) =>
-    one(ask([oil, water, benzoate], [], ground({ facts: range, answers })), 'ph')
+  const ph = (target: TargetPh | null) =>
+    one(ask([oil, water, benzoate], [], ground({ facts: range }), 'water-in-oil', target), 'ph')
 
   it('is missing, and a booster is none', () => {
     const booster = line('Ethylhexylglycerin', 'preservative booster', 0.1, true)
@@ -226,13 +217,16 @@ describe('preservative', () => {
     expect(one(ask([oil], []), 'preservative')).toBeUndefined()
   })
 
-  it('works at the target pH or not; without a target that is asked for', () => {
-    expect(ph([])).toMatchObject({ isOpen: true, asksFor: 'target pH' })
-    expect(ph([target(4.5)])).toMatchObject({ isOpen: false, value: 4.5 })
-    expect(ph([target(6)])?.answer).toContain('target 6.00')
-    expect(ph([target(6)])?.isOpen).toBe(true)
-    // A later note without a pH leaves the target.
-    expect(ph([target(4.5), { ...target(null), at: '2026-02-01' }])?.value).toBe(4.5)
+  it('works at the target pH of the formula or not; without one the question is open', () => {
+    expect(ph(null)).toMatchObject({ isOpen: true })
+    expect(ph({ low: 4.5, high: 4.5 })).toMatchObject({ isOpen: false })
+    expect(ph({ low: 6, high: 6 })).toMatchObject({ isOpen: true })
+    expect(ph({ low: 6, high: 6 })?.answer).toContain('target 6.00;')
+    // Of a range both ends have to be borne.
+    expect(ph({ low: 4, high: 5 })?.isOpen).toBe(false)
+    expect(ph({ low: 4.8, high: 5.2 })).toMatchObject({ isOpen: true })
+    expect(ph({ low: 4.8, high: 5.2 })?.answer).toContain('target 4.80 to 5.20')
+    expect(ph({ low: 4.8, high: 5.2 })?.askedAbout).not.toBe(ph({ low: 4.8, high: 5 })?.askedAbout)
     expect(one(ask(cream, joined), 'ph')).toBeUndefined()
   })
 })
@@ -276,8 +270,8 @@ describe('what the book says', () => {
 
 describe('a person’s answer', () => {
   const answer = (askedAbout: string, more: object = {}) => ({
-    ...{ question: 'salt', kind: 'answered' as const, note: 'Sugar does it', value: null, askedAbout },
-    ...{ by: 'LB', at: '2026-03-02T10:00:00Z' },
+    ...{ question: 'salt', kind: 'answered' as const, note: 'Sugar does it', askedAbout },
+    ...{ by: 'LB', at: '2026-03-02T10:00:00Z', number: 1 },
     ...more,
   })
   const saltless = cream.filter((one) => one !== salt)
@@ -310,5 +304,16 @@ describe('a person’s answer', () => {
       answer(asked?.askedAbout ?? ''),
     ]
     expect(one(ask(saltless, joined, ground({ ...holding, answers })), 'salt')?.given?.note).toBe('Later')
+  })
+
+  it('of an earlier version holds again where what it rested on came back', () => {
+    const answers = [
+      answer('something else', { note: 'On the third', number: 3, at: '2026-05-01T10:00:00Z' }),
+      answer(asked?.askedAbout ?? '', { note: 'On the first' }),
+    ]
+    const on = (given: typeof answers) =>
+      one(ask(saltless, joined, ground({ ...holding, answers: given })), 'salt')
+    expect(on(answers)).toMatchObject({ isOpen: false, given: { note: 'On the first', number: 1 } })
+    expect(on(answers.slice(0, 1))).toMatchObject({ isOpen: true, isReopened: true, given: { number: 3 } })
   })
 })

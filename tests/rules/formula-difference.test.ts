@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { difference } from '@/lib/formula/rules/difference'
+import { difference, differenceFinding } from '@/lib/formula/rules/difference'
 
 const line = (inciName: string, percent: number, more: object = {}) => ({
   ...{ phase: 'A', ingredientId: null, inciName, function: '', density: 1, isInternal: false },
@@ -11,7 +11,7 @@ const step = (instruction: string, more: object = {}) => ({
   ...more,
 })
 const side = (lines: ReturnType<typeof line>[], steps: ReturnType<typeof step>[] = []) => ({
-  emulsionType: 'water-in-oil' as const,
+  ...{ emulsionType: 'water-in-oil' as const, targetPh: null },
   ...{ lines, steps },
 })
 const inside = { phase: 'B', isInternal: true }
@@ -43,6 +43,15 @@ describe('the difference of two versions', () => {
     ])
     expect(found.lines[0]?.fields).toEqual(['percentThousandths'])
     expect(found.counts).toEqual({ added: 1, removed: 1, changed: 2 })
+  })
+
+  it('says that the target pH moved, where no line did too', () => {
+    const acid = { ...one, targetPh: { low: 4.5, high: 4.5 } }
+    const wide = { ...one, targetPh: { low: 4.5, high: 5.5 } }
+    const finding = differenceFinding(difference(acid, wide), 'water')
+    expect(finding.strong).not.toBe('Nothing')
+    expect(finding.sentence).toContain('Target pH 4.50 to 5.50, it was 4.50.')
+    expect(differenceFinding(difference(wide, wide), 'water').strong).toBe('Nothing')
   })
 
   it('computes what follows for both: total, inside by mass and volume, oil to water, cost', () => {

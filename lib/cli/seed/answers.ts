@@ -4,6 +4,7 @@ import { answerQuestion } from '@/lib/formula-answer/commands'
 import { formulaAnswerInput } from '@/lib/formula-answer/schema'
 import { getFormula } from '@/lib/formula/queries/get-formula'
 import { formulaChecks } from '@/lib/formula/rules/checks'
+import { targetPhOf } from '@/lib/formula/rules/target-ph'
 import { daysAgo, type Filling } from './context'
 
 /** Questions to the formulas, answered as on the page. */
@@ -13,7 +14,8 @@ export async function answerFormulas(filling: Filling): Promise<void> {
   for (const { formula: code, ...answer } of demoAnswers) {
     const formula = await getFormula(filling.db, liv, code)
     const { emulsionType, lines, steps, ground, versionId } = formula
-    const check = formulaChecks(emulsionType, lines, steps, ground).find((one) => one.key === answer.question)
+    const checks = formulaChecks(emulsionType, lines, steps, ground, targetPhOf(formula))
+    const check = checks.find((one) => one.key === answer.question)
     if (!check) throw new Error(`The demo answers a question that ${code} is not asked: ${answer.question}.`)
     const input = formulaAnswerInput.parse({
       id: newId(),
@@ -21,6 +23,6 @@ export async function answerFormulas(filling: Filling): Promise<void> {
       askedAbout: check.askedAbout,
       ...answer,
     })
-    await filling.act(liv, at, (trx, now) => answerQuestion(trx, liv, code, input, now))
+    await filling.act(liv, at, (trx) => answerQuestion(trx, liv, code, input))
   }
 }

@@ -58,6 +58,7 @@ export async function fillFormulas(filling: Filling, clients: Record<DemoClient,
           emulsionType: formula.emulsionType,
           clientId: clients[formula.client],
           note: formula.note,
+          ...{ targetPhLow: formula.targetPh, targetPhHigh: formula.targetPh },
           lines: linesOf(formula, ids),
           steps: formula.steps.map((s) => ({
             id: newId(),

@@ -30,7 +30,10 @@ export async function createFormula(trx: Trx, actor: Actor, input: CreateFormula
     .execute()
   await trx
     .insertInto('formulaVersion')
-    .values({ id: versionId, formulaId: id, number: 1, note, createdBy: actor.personId })
+    .values({
+      ...{ id: versionId, formulaId: id, number: 1, note, createdBy: actor.personId },
+      ...{ targetPhLow: input.targetPhLow, targetPhHigh: input.targetPhHigh },
+    })
     .execute()
   await insertLines(trx, versionId, input.lines)
   await insertSteps(trx, versionId, input.steps)

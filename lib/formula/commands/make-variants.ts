@@ -13,7 +13,7 @@ import {
 } from '../rules/variants'
 import type { MakeVariantsInput } from '../schema'
 
-type Base = { formulaId: string; clientId: string | null; emulsionType: string; number: number }
+type Base = Awaited<ReturnType<typeof findBase>>
 
 /**
  * A family of prototypes: each a formula of its own with a draft that holds the base's lines at other
@@ -59,6 +59,8 @@ export async function makeVariants(trx: Trx, actor: Actor, code: string, input: 
         formulaId: member.id,
         number: 1,
         note: `From ${code}, version ${base.number}: ${levelsText(levelsOf(member.shares))}.`,
+        targetPhLow: base.targetPhLow,
+        targetPhHigh: base.targetPhHigh,
         createdBy: actor.personId,
       })),
     )
@@ -78,11 +80,12 @@ export async function makeVariants(trx: Trx, actor: Actor, code: string, input: 
   return input.members.map(({ id, versionId, code: own }) => ({ id, code: own, versionId }))
 }
 
-async function findBase(trx: Trx, code: string, versionId: string): Promise<Base> {
+async function findBase(trx: Trx, code: string, versionId: string) {
   const base = await trx
     .selectFrom('formulaVersion')
     .innerJoin('formula', 'formula.id', 'formulaVersion.formulaId')
     .select(['formula.id as formulaId', 'formula.clientId', 'formula.emulsionType', 'formulaVersion.number'])
+    .select(['formulaVersion.targetPhLow', 'formulaVersion.targetPhHigh'])
     .where('formulaVersion.id', '=', versionId)
     .where('formula.code', '=', code)
     .executeTakeFirst()

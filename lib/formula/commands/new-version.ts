@@ -15,13 +15,14 @@ export async function newFormulaVersion(trx: Trx, actor: Actor, code: string, in
   if (!formula) throw refuse.notFound(`There is no formula ${code}. Look for it in the list of formulas.`)
   const versions = await trx
     .selectFrom('formulaVersion')
-    .select(['id', 'number', 'state'])
+    .select(['id', 'number', 'state', 'targetPhLow', 'targetPhHigh'])
     .where('formulaId', '=', formula.id)
     .orderBy('number')
     .execute()
   const same = versions.find((version) => version.id === input.id)
   if (same) return { id: same.id, number: same.number }
-  if (!versions.some((version) => version.id === input.fromVersionId)) {
+  const from = versions.find((version) => version.id === input.fromVersionId)
+  if (!from) {
     throw refuse.notFound(`${code} has no such version to begin from. Load the page again.`)
   }
   const draft = versions.find((version) => version.state === 'draft')
@@ -34,7 +35,10 @@ export async function newFormulaVersion(trx: Trx, actor: Actor, code: string, in
   const number = (versions.at(-1)?.number ?? 0) + 1
   await trx
     .insertInto('formulaVersion')
-    .values({ id: input.id, formulaId: formula.id, number, note: input.note, createdBy: actor.personId })
+    .values({
+      ...{ id: input.id, formulaId: formula.id, number, note: input.note, createdBy: actor.personId },
+      ...{ targetPhLow: from.targetPhLow, targetPhHigh: from.targetPhHigh },
+    })
     .execute()
   await copyLines(trx, input.fromVersionId, input.id)
   await copySteps(trx, input.fromVersionId, input.id)

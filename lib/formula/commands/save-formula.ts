@@ -36,7 +36,10 @@ export async function saveFormula(trx: Trx, _actor: Actor, code: string, input: 
   await replaceSteps(trx, input.versionId, input.steps)
   return trx
     .updateTable('formulaVersion')
-    .set({ note: input.note, version: input.version + 1 })
+    .set({
+      ...{ note: input.note, version: input.version + 1 },
+      ...{ targetPhLow: input.targetPhLow, targetPhHigh: input.targetPhHigh },
+    })
     .where('id', '=', input.versionId)
     .returning(['id as versionId', 'number', 'version'])
     .executeTakeFirstOrThrow()

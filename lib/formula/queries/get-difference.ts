@@ -2,6 +2,7 @@ import type { Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
 import { difference } from '../rules/difference'
+import { targetPhOf } from '../rules/target-ph'
 import type { DifferenceQuery, EmulsionType } from '../schema'
 
 /**
@@ -15,6 +16,7 @@ export async function getDifference(db: Db, _actor: Actor, code: string, query: 
     .innerJoin('formulaVersion', 'formulaVersion.formulaId', 'formula.id')
     .select(['formula.code', 'formula.name', 'formula.emulsionType'])
     .select(['formulaVersion.id', 'formulaVersion.number', 'formulaVersion.state', 'formulaVersion.note'])
+    .select(['formulaVersion.targetPhLow', 'formulaVersion.targetPhHigh'])
     .where('formula.code', 'in', [code, otherCode])
     .orderBy('formulaVersion.number')
     .execute()
@@ -44,6 +46,7 @@ export async function getDifference(db: Db, _actor: Actor, code: string, query: 
     .execute()
   const side = (version: typeof from) => ({
     emulsionType: version.emulsionType as EmulsionType,
+    targetPh: targetPhOf(version),
     lines: lines.filter((line) => line.formulaVersionId === version.id),
     steps: steps.filter((step) => step.formulaVersionId === version.id),
   })
@@ -66,6 +69,8 @@ type Version = {
   number: number
   state: string
   note: string
+  targetPhLow: number | null
+  targetPhHigh: number | null
 }
 
 function headOf({ code, name, emulsionType, number, state, note }: Version) {

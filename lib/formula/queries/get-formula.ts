@@ -23,6 +23,8 @@ export async function getFormula(db: Db, _actor: Actor, code: string, number?: n
       'formulaVersion.number',
       'formulaVersion.state',
       'formulaVersion.note',
+      'formulaVersion.targetPhLow',
+      'formulaVersion.targetPhHigh',
       'formulaVersion.version',
       'formulaVersion.createdAt',
       'person.initials as createdBy',
@@ -44,7 +46,7 @@ export async function getFormula(db: Db, _actor: Actor, code: string, number?: n
     listSteps(db, shown.id),
     listBatchesMade(db, shown.formulaId),
     listFamilies(db, shown.familyOfVersionId, shown.formulaId),
-    getGround(db, { formulaId: shown.formulaId, versionId: shown.id }),
+    getGround(db, { formulaId: shown.formulaId, versionId: shown.id, number: shown.number }),
   ])
   return {
     id: shown.formulaId,
@@ -56,6 +58,8 @@ export async function getFormula(db: Db, _actor: Actor, code: string, number?: n
     number: shown.number,
     state: shown.state as 'draft' | 'locked',
     note: shown.note,
+    targetPhLow: shown.targetPhLow,
+    targetPhHigh: shown.targetPhHigh,
     version: shown.version,
     createdBy: shown.createdBy,
     createdAt: shown.createdAt,

@@ -18,6 +18,7 @@ import { neutralQuestion } from './checks/neutraliser'
 import { phQuestion, preservativeQuestion } from './checks/preservative'
 import { coldQuestion, finishQuestion, shearQuestion, slowQuestion } from './checks/process'
 import { agreeQuestion } from './checks/salt-and-polymer'
+import type { TargetPh } from './target-ph'
 import { formulaTotals } from './totals'
 
 export type FormulaCheck = {
@@ -35,13 +36,10 @@ export type FormulaCheck = {
   steps: readonly number[]
   /** What it rests on; an answer holds while this stays the same. */
   askedAbout: string
-  /** The latest answer, whether it still holds or not. */
+  /** The latest answer that holds, of this version or an earlier one; else the latest that did. */
   given: GivenAnswer | null
   /** Answered once, but what it rests on has changed since. */
   isReopened: boolean
-  asksFor: Question['asksFor'] | null
-  /** The number that an earlier answer brought. */
-  value: number | null
 }
 
 /** Questions with a reason each, answered by the formula's own lines and steps or by a person's note. */
@@ -50,19 +48,17 @@ export function formulaChecks(
   lines: readonly CheckLine[],
   steps: readonly CheckStep[],
   ground: Ground = noGround,
+  targetPh: TargetPh | null = null,
 ): FormulaCheck[] {
-  const latest = new Map(
-    ground.answers.toSorted((a, b) => (a.at < b.at ? -1 : 1)).map((given) => [given.question, given]),
-  )
-  // A later note without a pH leaves the target as it is.
-  const target = ground.answers
-    .filter((given) => given.question === 'ph' && given.value !== null)
-    .toSorted((a, b) => (a.at < b.at ? 1 : -1))[0]
-  const asked = lookAt(type, lines, steps, ground, target?.value ?? null)
+  const newest = ground.answers.toSorted((a, b) => b.number - a.number || (a.at < b.at ? 1 : -1))
+  const asked = lookAt(type, lines, steps, ground, targetPh)
   return questionsTo(asked).map((question) => {
     const about = askedAbout(asked, question)
-    const given = latest.get(question.key) ?? null
-    const holds = given !== null && given.askedAbout === about
+    const own = newest.filter((given) => given.question === question.key)
+    // An answer holds again where what it rested on came back.
+    const holding = own.find((given) => given.askedAbout === about)
+    const given = holding ?? own[0] ?? null
+    const holds = holding !== undefined
     return {
       key: question.key,
       question: question.question,
@@ -77,8 +73,6 @@ export function formulaChecks(
       askedAbout: about,
       given,
       isReopened: question.isOpen && given !== null && !holds,
-      asksFor: question.asksFor ?? null,
-      value: question.key === 'ph' ? asked.targetPh : null,
     }
   })
 }
@@ -111,7 +105,7 @@ function lookAt(
   all: readonly CheckLine[],
   steps: readonly CheckStep[],
   ground: Ground,
-  targetPh: number | null,
+  targetPh: TargetPh | null,
 ): Asked {
   const lines = all.filter((line) => line.percentThousandths > 0)
   const isWaterInside = type !== 'oil-in-water'

@@ -1,4 +1,5 @@
 import type { EmulsionType, FormulaLine, FormulaStep } from '../schema'
+import { targetPhText, type TargetPh } from './target-ph'
 import { formulaTotals, oilAndWater, type FormulaTotals } from './totals'
 
 export type Mark = 'same' | 'added' | 'removed' | 'changed'
@@ -12,9 +13,18 @@ type StepField = keyof Step
 export type LineDifference = { mark: Mark; from: Line | null; to: Line | null; fields: LineField[] }
 export type StepDifference = { mark: Mark; from: Step | null; to: Step | null; fields: StepField[] }
 
-export type Consequences = FormulaTotals & { oilThousandths: number; waterThousandths: number }
+export type Consequences = FormulaTotals & {
+  oilThousandths: number
+  waterThousandths: number
+  targetPh: TargetPh | null
+}
 
-type Side = { emulsionType: EmulsionType; lines: readonly Line[]; steps: readonly Step[] }
+type Side = {
+  emulsionType: EmulsionType
+  targetPh: TargetPh | null
+  lines: readonly Line[]
+  steps: readonly Step[]
+}
 
 export type Difference = {
   lines: LineDifference[]
@@ -46,23 +56,26 @@ export function differenceFinding({ from, to, counts }: Told, inside: 'water' | 
     counts.added ? `${counts.added} new` : '',
     counts.removed ? `${counts.removed} gone` : '',
   ].filter(Boolean)
-  const touched = parts.length ? `Lines and steps: ${parts.join(', ')}.` : 'No line and no step differs.'
+  const rows = parts.length ? `Lines and steps: ${parts.join(', ')}.` : 'No line and no step differs.'
+  const [wasPh, nowPh] = [from, to].map((side) => targetPhText(side.targetPh) || 'none')
+  const isPhMoved = wasPh !== nowPh
+  const touched = isPhMoved ? `${rows} Target pH ${nowPh}, it was ${wasPh}.` : rows
   const [a, b] = [from, to].map((side) => side.internalVolumePercent)
   if (typeof a !== 'number' || typeof b !== 'number')
     return {
-      strong: parts.length ? 'Different' : 'The same',
+      strong: parts.length || isPhMoved ? 'Different' : 'The same',
       rest: ', and one holds nothing yet',
       sentence: touched,
     }
   const [was, now] = [`${a.toFixed(1)} %`, `${b.toFixed(1)} %`]
-  if (!parts.length)
+  if (!parts.length && !isPhMoved)
     return { strong: 'Nothing', rest: ` differs: ${now} ${inside} inside`, sentence: touched }
   const rest = was === now ? ` ${inside} inside, as before` : ` ${inside} inside, it was ${was}`
   return { strong: now, rest, sentence: `By volume. ${touched}` }
 }
 
-function consequences({ emulsionType, lines }: Side): Consequences {
-  return { ...formulaTotals(lines), ...oilAndWater(emulsionType, lines) }
+function consequences({ emulsionType, lines, targetPh }: Side): Consequences {
+  return { ...formulaTotals(lines), ...oilAndWater(emulsionType, lines), targetPh }
 }
 
 const lineFields: LineField[] = [

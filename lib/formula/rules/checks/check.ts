@@ -1,6 +1,7 @@
 import type { IngredientFacts } from '@/lib/ingredient/queries'
 import type { EmulsionType, FormulaLine, FormulaStep } from '../../schema'
 import { percentText } from '../numbers'
+import type { TargetPh } from '../target-ph'
 
 export const checkKeys = [
   ...(['polymer', 'gel', 'slow', 'shear', 'cold', 'thick', 'salt', 'holds', 'agree', 'neutral'] as const),
@@ -26,8 +27,9 @@ export type GivenAnswer = {
   question: string
   kind: 'answered' | 'set aside'
   note: string
-  value: number | null
   askedAbout: string
+  /** The version it was given on. */
+  number: number
   by: string
   at: string
 }
@@ -48,7 +50,7 @@ export type Asked = {
   internalVolumePercent: number | null
   factsOf: (line: CheckLine) => IngredientFacts | null
   borne: readonly BorneBatch[]
-  targetPh: number | null
+  targetPh: TargetPh | null
 }
 export type Joining = { step: CheckStep; number: number; added: string | null }
 
@@ -69,8 +71,6 @@ export type Question = {
   steps: readonly number[]
   /** Figures beside these on which it rests. */
   figures?: readonly (string | number | null)[]
-  /** A number that its answer may bring along. */
-  asksFor?: 'target pH'
 }
 
 export const share = (line: CheckLine) => `${percentText(line.percentThousandths)} %`

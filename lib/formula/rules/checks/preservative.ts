@@ -1,3 +1,4 @@
+import { targetPhText } from '../target-ph'
 import { named, several, sourceOf, type Asked, type Question } from './check'
 
 export function preservativeQuestion(asked: Asked): Question | null {
@@ -26,7 +27,9 @@ export function phQuestion(asked: Asked): Question | null {
   })
   if (!limited.length) return null
   const { targetPh } = asked
-  const outside = limited.filter(({ low, high }) => targetPh !== null && (targetPh < low || targetPh > high))
+  const outside = limited.filter(
+    ({ low, high }) => targetPh !== null && (targetPh.low < low || targetPh.high > high),
+  )
   const range = ({ line, low, high }: (typeof limited)[number]) =>
     `${line.inciName} works from pH ${low.toFixed(2)} to ${high.toFixed(2)}`
   return {
@@ -34,18 +37,21 @@ export function phQuestion(asked: Asked): Question | null {
     question: 'Does the preservative work at the target pH?',
     answer:
       targetPh === null
-        ? `Open: no target pH is given. ${several(limited.map(range))}.`
+        ? `Open: no target pH is given with the lines. ${several(limited.map(range))}.`
         : outside.length
-          ? `Open: target ${targetPh.toFixed(2)}; ${several(outside.map(range))}.`
-          : `Yes, target ${targetPh.toFixed(2)}; ${several(limited.map(range))}.`,
+          ? `Open: target ${targetPhText(targetPh)}; ${several(outside.map(range))}.`
+          : `Yes, target ${targetPhText(targetPh)}; ${several(limited.map(range))}.`,
     isOpen: targetPh === null || outside.length > 0,
     reason: 'Acid preservatives work only where they are not dissociated; others are split at a high pH.',
     mark: sourceOf(limited.map(({ from }) => from)),
     at: null,
     lines: limited.map(({ line }) => line),
     steps: [],
-    figures: [targetPh, ...limited.flatMap(({ low, high }) => [low, high])],
-    asksFor: 'target pH',
+    // A single value stands once.
+    figures: [
+      ...new Set([targetPh?.low ?? null, targetPh?.high ?? null]),
+      ...limited.flatMap(({ low, high }) => [low, high]),
+    ],
   }
 }
 

@@ -7,5 +7,5 @@ export const POST = write({
   permission: 'formula.write',
   params: formulaAddress,
   input: formulaAnswerInput,
-  handler: ({ db, actor, params, input, now }) => answerQuestion(db, actor, params.code, input, now),
+  handler: ({ db, actor, params, input }) => answerQuestion(db, actor, params.code, input),
 })
