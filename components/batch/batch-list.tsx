@@ -4,7 +4,7 @@ import { Ledger, type LedgerColumn } from '@/components/ui/ledger'
 import { LinkButton } from '@/components/ui/link-button'
 import type { BatchRow } from '@/lib/batch/queries/list-batches'
 import type { BatchListQuery } from '@/lib/batch/schema'
-import { grouped } from '@/lib/formula/rules/numbers'
+import { grouped } from '@/lib/number/rules'
 
 type Props = { batches: BatchRow[]; query: BatchListQuery; day: (instant: string) => string }
 

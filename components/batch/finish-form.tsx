@@ -8,7 +8,7 @@ import { NumberField } from '@/components/ui/number-field'
 import { Section } from '@/components/ui/section'
 import { gramsText } from '@/lib/batch/rules/weighing'
 import type { BatchPage } from '@/lib/batch/queries/get-batch'
-import { readDecimal } from '@/lib/formula/rules/numbers'
+import { readDecimal } from '@/lib/number/rules'
 import { totalGrams } from '@/lib/science/making'
 import { useAct } from './use-act'
 

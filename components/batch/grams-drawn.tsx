@@ -1,5 +1,5 @@
 import type { GramsTo } from '@/lib/batch/rules/size'
-import { grouped } from '@/lib/formula/rules/numbers'
+import { grouped } from '@/lib/number/rules'
 
 type Props = {
   needs: { name: string; grams: number; parts: GramsTo[] }[]

@@ -4,8 +4,10 @@ import { conditionsText } from '@/components/formula/read-steps'
 import { Heading } from '@/components/ui/heading'
 import type { BatchPage } from '@/lib/batch/queries/get-batch'
 import { stepCautions } from '@/lib/batch/rules/steps'
-import { dayText, gramsText, toleranceGrams } from '@/lib/batch/rules/weighing'
-import { grouped, percentText } from '@/lib/formula/rules/numbers'
+import { gramsText, toleranceGrams } from '@/lib/batch/rules/weighing'
+import { dayText } from '@/lib/report/rules'
+import { percentText } from '@/lib/formula/rules/numbers'
+import { grouped } from '@/lib/number/rules'
 import { PrintButton } from './print-button'
 
 /** The batch as a sheet to write on: targets and steps printed, everything else blank. */

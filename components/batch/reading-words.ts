@@ -1,6 +1,6 @@
 import type { BatchPage } from '@/lib/batch/queries/get-batch'
 import { measured } from '@/lib/batch/rules/readings'
-import { grouped } from '@/lib/formula/rules/numbers'
+import { grouped } from '@/lib/number/rules'
 import { centrifugeMethod } from '@/lib/science/methods/emulsion'
 import { viscosityMethod } from '@/lib/science/methods/measures'
 import { exactly, factsOf, type FigureFacts } from '@/lib/science/methods/method'

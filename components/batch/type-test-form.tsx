@@ -10,7 +10,7 @@ import { Select } from '@/components/ui/select'
 import { isTypeAsStated } from '@/lib/batch/rules/finding'
 import type { BatchPage } from '@/lib/batch/queries/get-batch'
 import { typesFound, typeTestMethods } from '@/lib/batch/schema'
-import { readDecimal } from '@/lib/formula/rules/numbers'
+import { readDecimal } from '@/lib/number/rules'
 import { useAct } from './use-act'
 
 type Props = { batch: BatchPage; onSaved: () => void }

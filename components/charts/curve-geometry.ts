@@ -191,13 +191,6 @@ export function doubtGroups(curves: PlottedCurve[]): { weeks: number; low: numbe
   return [...groups.values()]
 }
 
-/** A number on an axis: decimals as asked, thousands with a thin gap, a true minus. */
-export function axisNumber(value: number, decimals: number): string {
-  const [whole = '', part] = Math.abs(value).toFixed(decimals).split('.')
-  const grouped = whole.replace(/\B(?=(\d{3})+(?!\d))/g, '\u2009')
-  return `${value < 0 && Number(value.toFixed(decimals)) !== 0 ? '\u2212' : ''}${grouped}${part ? `.${part}` : ''}`
-}
-
 export function curveName(series: CurveSeries): string {
   if (series.kind === 'freeze-thaw') return 'Freeze-thaw'
   return series.kind === 'batch' ? series.label : `${series.label} °C`

@@ -1,5 +1,6 @@
 'use client'
 
+import { grouped } from '@/lib/number/rules'
 import { useId } from 'react'
 import type { Key } from 'react'
 import { Area, ComposedChart, Line, Tooltip, XAxis, YAxis } from 'recharts'
@@ -7,7 +8,7 @@ import { colourOf, Drawn } from '../marks/drawn'
 import { heatLine } from '../marks/heat'
 import { stationMarkerShapes } from '../marks/station-marker-shapes'
 import type { CurveFrame, CurveInput, CurvePlace, CurveSeries, CurveTime } from './curve-data'
-import { axisNumber, colourRole, curveName, curveScale, markerOf, plotCurve } from './curve-geometry'
+import { colourRole, curveName, curveScale, markerOf, plotCurve } from './curve-geometry'
 import type { PlottedCurve } from './curve-geometry'
 import { CurveGround } from './curve-ground'
 import { CurveMarks } from './curve-marks'
@@ -24,7 +25,7 @@ export function CurvePlot({ input, time, frame }: { input: CurveInput; time: Cur
   const perWeek = (frame.end - frame.zero) / (time.endWeeks || 1)
   const from = -(frame.zero - frame.left) / perWeek
   const to = time.endWeeks + (frame.width - frame.end) / perWeek
-  const texts = new Map(scale.ticks.map(({ value, share }) => [share, axisNumber(value, input.decimals)]))
+  const texts = new Map(scale.ticks.map(({ value, share }) => [share, grouped(value, input.decimals)]))
   const place: CurvePlace = {
     left: frame.left,
     right: frame.width,

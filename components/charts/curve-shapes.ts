@@ -1,10 +1,10 @@
+import { grouped } from '@/lib/number/rules'
 import { heatLine } from '../marks/heat'
 import type { Point, Shape, Step, Words } from '../marks/shape'
 import { stationMarkerShapes } from '../marks/station-marker-shapes'
 import { stripes } from '../marks/texture'
 import type { CurveInput, CurveSeries } from './curve-data'
 import {
-  axisNumber,
   curveName,
   curveScale,
   doubtGroups,
@@ -100,7 +100,7 @@ function grid(input: CurveInput, ticks: { value: number; share: number }[], plot
     words({
       x: plot.left - 5,
       y: plot.y(share) + 3,
-      text: axisNumber(value, input.decimals),
+      text: grouped(value, input.decimals),
       size: 8.5,
       anchor: 'end',
     }),

@@ -1,8 +1,9 @@
 'use client'
 
+import { grouped } from '@/lib/number/rules'
 import { useState } from 'react'
 import type { CurveInput } from '@/components/charts/curve-data'
-import { axisNumber, curveScale, markerOf, nearerEdge } from '@/components/charts/curve-geometry'
+import { curveScale, markerOf, nearerEdge } from '@/components/charts/curve-geometry'
 import { CurvePlot } from '@/components/charts/curve-plot'
 import { CurveTable } from '@/components/charts/curve-table'
 import { halo } from '@/components/charts/halo'
@@ -108,7 +109,7 @@ function BandWords({ input: { band, series, decimals }, left }: { input: CurveIn
       fontWeight={600}
       style={{ fill: 'var(--alarm)', ...halo('var(--wash)') }}
     >
-      {isOneSided ? band.text : `allowed ${isLower ? 'down' : 'up'} to ${axisNumber(edge, decimals || 1)}`}
+      {isOneSided ? band.text : `allowed ${isLower ? 'down' : 'up'} to ${grouped(edge, decimals || 1)}`}
     </text>
   )
 }

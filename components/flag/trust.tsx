@@ -1,3 +1,4 @@
+import { grouped } from '@/lib/number/rules'
 import Link from 'next/link'
 import { Hundred } from '@/components/marks/hundred'
 import { Heading } from '@/components/ui/heading'
@@ -69,8 +70,8 @@ export function Trust() {
               <li key={line}>{line}</li>
             ))}
             <li>
-              {studies.toLocaleString('en').replace(',', '\u2009')} studies a figure, seed {seed}. Anyone can
-              count them again: <code className="font-mono text-13">npm run simulate</code>
+              {grouped(studies, 0)} studies a figure, seed {seed}. Anyone can count them again:{' '}
+              <code className="font-mono text-13">npm run simulate</code>
             </li>
           </ul>
         </Section>

@@ -2,7 +2,8 @@
 
 import { FigureDetails } from '@/components/ui/figure-details'
 import type { DifferencePage } from '@/lib/formula/queries/get-difference'
-import { grouped, moneyText, percentText } from '@/lib/formula/rules/numbers'
+import { moneyText, percentText } from '@/lib/formula/rules/numbers'
+import { grouped } from '@/lib/number/rules'
 import { targetPhText } from '@/lib/formula/rules/target-ph'
 import type { FigureFacts } from '@/lib/science/methods/method'
 import { costFacts, insideFacts, oilWaterFacts, oilWaterText, totalFacts } from './formula-facts'

@@ -2,7 +2,7 @@ import Link from 'next/link'
 import { Empty } from '@/components/ui/empty'
 import { Ledger } from '@/components/ui/ledger'
 import type { FormulaPage } from '@/lib/formula/queries/get-formula'
-import { grouped } from '@/lib/formula/rules/numbers'
+import { grouped } from '@/lib/number/rules'
 
 /** The batches that were made of this formula, of any version. */
 export function MadePart({ formula }: { formula: FormulaPage }) {

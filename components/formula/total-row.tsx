@@ -1,7 +1,8 @@
 'use client'
 
 import { useState } from 'react'
-import { grouped, moneyText, percentText, readDecimal } from '@/lib/formula/rules/numbers'
+import { moneyText, percentText } from '@/lib/formula/rules/numbers'
+import { grouped, readDecimal } from '@/lib/number/rules'
 import { jarCents, oilAndWater, type Amounts, type FormulaTotals } from '@/lib/formula/rules/totals'
 import type { EmulsionType } from '@/lib/formula/schema'
 import { FigureDetails } from '@/components/ui/figure-details'

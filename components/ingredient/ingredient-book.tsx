@@ -10,7 +10,7 @@ import { Ledger } from '@/components/ui/ledger'
 import { LinkButton } from '@/components/ui/link-button'
 import type { BookRow, IngredientBook as Book } from '@/lib/ingredient/queries'
 import { ingredientPageSize, type IngredientBookQuery } from '@/lib/ingredient/schema'
-import { grouped } from '@/lib/study/rules/words'
+import { grouped } from '@/lib/number/rules'
 import { bookAddress } from './book-address'
 import { bookColumns } from './book-columns'
 import { BookFilter } from './book-filter'
@@ -93,7 +93,7 @@ function Headline({ book }: { book: Book }) {
   return (
     <>
       <b>
-        {grouped(String(book.fromMemory))} of {grouped(String(book.count))}
+        {grouped(book.fromMemory, 0)} of {grouped(book.count, 0)}
       </b>{' '}
       {book.count === 1 ? 'density is' : 'densities are'} from memory
     </>
@@ -111,7 +111,7 @@ function Pages({ book, query }: { book: Book; query: IngredientBookQuery }) {
       className="mt-3 flex flex-wrap items-center gap-x-8 text-15"
     >
       <span className="text-soft">
-        {first} to {first + book.rows.length - 1} of {grouped(String(book.count))}
+        {first} to {first + book.rows.length - 1} of {grouped(book.count, 0)}
       </span>
       {book.page > 1 ? (
         <Link href={bookAddress(query, { page: book.page - 1 })} className={link}>

@@ -1,4 +1,5 @@
-import { moneyText, percentText, readDecimal, readScaled } from '@/lib/formula/rules/numbers'
+import { moneyText, percentText } from '@/lib/formula/rules/numbers'
+import { readDecimal, readScaled } from '@/lib/number/rules'
 import type { BookRow } from '@/lib/ingredient/queries'
 import { fromMemory } from '@/lib/ingredient/schema'
 

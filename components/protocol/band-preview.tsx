@@ -2,7 +2,7 @@
 
 import { useState } from 'react'
 import { NumberField } from '@/components/ui/number-field'
-import { readNumber } from '@/components/ui/read-number'
+import { readDecimal } from '@/lib/number/rules'
 import { bandText } from '@/lib/protocol/rules/words'
 import type { PlannedAttribute } from '@/lib/protocol/schema'
 import { attributeOf } from '@/lib/reading/schema/attributes'
@@ -25,7 +25,7 @@ export function BandPreview({ planned }: { planned: PlannedAttribute }) {
         wrap="w-[170px]"
       />
       <p className="pb-1.5 text-15" aria-live="polite">
-        {label} may be {previewed(planned, readNumber(typed))}
+        {label} may be {previewed(planned, readDecimal(typed))}
       </p>
     </div>
   )

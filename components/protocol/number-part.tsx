@@ -2,7 +2,7 @@
 
 import { useState } from 'react'
 import { NumberField } from '@/components/ui/number-field'
-import { readNumber } from '@/components/ui/read-number'
+import { readDecimal } from '@/lib/number/rules'
 
 /** Keeps the text while it is typed; hands on only what is a number. */
 export function NumberPart({
@@ -22,7 +22,7 @@ export function NumberPart({
   return (
     <NumberField
       label={label}
-      value={readNumber(text) === value || text === '' || readNumber(text) === null ? text : String(value)}
+      value={readDecimal(text) === value || text === '' || readDecimal(text) === null ? text : String(value)}
       onText={(typed, number) => {
         setText(typed)
         if (number !== null) onNumber(number)

@@ -5,7 +5,7 @@ import { Button } from '@/components/ui/button'
 import { ErrorNote } from '@/components/ui/error-note'
 import { Field } from '@/components/ui/field'
 import { NumberField } from '@/components/ui/number-field'
-import { readNumber } from '@/components/ui/read-number'
+import { readDecimal } from '@/lib/number/rules'
 import { Section } from '@/components/ui/section'
 import { Select } from '@/components/ui/select'
 import { TextArea } from '@/components/ui/text-area'
@@ -93,7 +93,7 @@ export function PlanEditor({ code, name: savedName, version, onLeave, onSaved }:
   }
 
   function addWeek() {
-    const at = readNumber(week)
+    const at = readDecimal(week)
     if (at === null || at <= 0 || weeksOfPlan(plan).includes(at)) return
     setTimes({
       endWeeks: Math.max(plan.endWeeks, at),

@@ -7,7 +7,7 @@ import { Dialog } from '@/components/ui/dialog'
 import { ErrorNote } from '@/components/ui/error-note'
 import { Field } from '@/components/ui/field'
 import { NumberField } from '@/components/ui/number-field'
-import { readNumber } from '@/components/ui/read-number'
+import { readDecimal } from '@/lib/number/rules'
 import { Select } from '@/components/ui/select'
 import { toast } from '@/components/ui/toast'
 import { newId } from '@/lib/db/id'
@@ -46,7 +46,7 @@ export function StationDialog({ station, nextOrder, onClose, onDone }: Props) {
   async function save() {
     setBusy(true)
     setError(null)
-    const read = Object.fromEntries(numbers.map((key) => [key, readNumber(texts[key])]))
+    const read = Object.fromEntries(numbers.map((key) => [key, readDecimal(texts[key])]))
     const body = {
       ...read,
       ...(kind === 'freeze-thaw'

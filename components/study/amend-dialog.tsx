@@ -11,7 +11,7 @@ import { ErrorNote } from '@/components/ui/error-note'
 import { Field } from '@/components/ui/field'
 import { NumberField } from '@/components/ui/number-field'
 import { RadioGroup } from '@/components/ui/radio-group'
-import { readNumber } from '@/components/ui/read-number'
+import { readDecimal } from '@/lib/number/rules'
 import { Select } from '@/components/ui/select'
 import { TextArea } from '@/components/ui/text-area'
 import { toast } from '@/components/ui/toast'
@@ -65,7 +65,7 @@ export function AmendDialog({ study, stations, onClose }: Props) {
     const shared = { id, version: study.version, reason }
     switch (kind) {
       case 'time point':
-        return { kind, ...shared, studyStationId: stationId, week: readNumber(week) ?? 0, isMeasured }
+        return { kind, ...shared, studyStationId: stationId, week: readDecimal(week) ?? 0, isMeasured }
       case 'retain':
         return { kind, ...shared, jarCode }
       case 'station end':

@@ -3,7 +3,7 @@
 import { TakeInitial } from '@/components/batch/take-initial'
 import { NumberField } from '@/components/ui/number-field'
 import { RadioGroup } from '@/components/ui/radio-group'
-import { readNumber } from '@/components/ui/read-number'
+import { readDecimal } from '@/lib/number/rules'
 import { Section } from '@/components/ui/section'
 import { Select } from '@/components/ui/select'
 import type { PlannedAttribute, ProtocolPlan } from '@/lib/protocol/schema'
@@ -137,7 +137,7 @@ function InstrumentChoice({
 /** Torque becomes mPa·s while it is typed. */
 function Computed({ planned, draft, texts }: { planned: PlannedAttribute; draft: Draft; texts?: string[] }) {
   if (!planned.viscosity || !draft.isTorque) return null
-  const torques = (texts ?? []).map(readNumber).filter((value) => value !== null)
+  const torques = (texts ?? []).map(readDecimal).filter((value) => value !== null)
   if (torques.length === 0) return null
   const torquePercent = mean(torques)
   if (torquePercent <= 0) return null

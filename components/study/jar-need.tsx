@@ -5,7 +5,7 @@ import { jarShapes } from '@/components/marks/jar-shapes'
 import { moveShapes } from '@/components/marks/place'
 import { FigureDetails } from '@/components/ui/figure-details'
 import { setAsideJars } from '@/lib/protocol/rules/plan'
-import { grouped } from '@/lib/study/rules/words'
+import { grouped } from '@/lib/number/rules'
 import { needFacts } from './need-facts'
 import type { Need } from './start-state'
 
@@ -93,14 +93,14 @@ export function JarNeed({ need }: { need: Need }) {
         <FigureDetails figure={`${need.jars} jars`} facts={() => needFacts(need, 'jars')} /> of{' '}
         {plan.fillG.toFixed(1)} g are{' '}
         <FigureDetails
-          figure={`${grouped(String(Math.ceil(need.grams)))} g`}
+          figure={`${grouped(Math.ceil(need.grams), 0)} g`}
           facts={() => needFacts(need, 'grams')}
         />{' '}
-        with {plan.lossPercent} % loss. {need.batch.code} has {grouped(String(Math.floor(need.leftG)))} g
-        left, enough for {need.enoughFor}.{' '}
+        with {plan.lossPercent} % loss. {need.batch.code} has {grouped(Math.floor(need.leftG), 0)} g left,
+        enough for {need.enoughFor}.{' '}
         {need.fits ? null : (
           <FigureDetails
-            figure={`${grouped(String(Math.ceil(need.shortG)))} g short`}
+            figure={`${grouped(Math.ceil(need.shortG), 0)} g short`}
             facts={() => needFacts(need, 'short')}
             className="font-650 text-alarm"
           />

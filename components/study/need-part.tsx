@@ -3,7 +3,7 @@
 import { RadioGroup } from '@/components/ui/radio-group'
 import { Section } from '@/components/ui/section'
 import type { FitOption } from '@/lib/study/rules/plan'
-import { grouped } from '@/lib/study/rules/words'
+import { grouped } from '@/lib/number/rules'
 import { JarNeed } from './jar-need'
 import type { Draft, Need } from './start-state'
 
@@ -48,9 +48,7 @@ export function NeedPart({
 }
 
 function fitText({ jars, grams, leftG }: FitOption) {
-  const needed = `${jars} jars, ${grouped(String(Math.ceil(grams)))} g`
-  if (leftG >= 0) return `${needed}: fits, ${grouped(String(Math.floor(leftG)))} g over`
-  return (
-    <span className="text-alarm">{`${needed}: ${grouped(String(Math.ceil(-leftG)))} g still missing`}</span>
-  )
+  const needed = `${jars} jars, ${grouped(Math.ceil(grams), 0)} g`
+  if (leftG >= 0) return `${needed}: fits, ${grouped(Math.floor(leftG), 0)} g over`
+  return <span className="text-alarm">{`${needed}: ${grouped(Math.ceil(-leftG), 0)} g still missing`}</span>
 }

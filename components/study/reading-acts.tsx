@@ -7,7 +7,7 @@ import { ErrorNote } from '@/components/ui/error-note'
 import { Field } from '@/components/ui/field'
 import { Select } from '@/components/ui/select'
 import { TextArea } from '@/components/ui/text-area'
-import { readNumber } from '@/components/ui/read-number'
+import { readDecimal } from '@/lib/number/rules'
 import { toast } from '@/components/ui/toast'
 import { newId } from '@/lib/db/id'
 import { ClientError, send } from '@/lib/http/fetcher'
@@ -146,7 +146,7 @@ function startOf({ attribute, detail, typed }: Reading): Record<string, string> 
 }
 
 function entryOf({ detail }: Reading, values: Record<string, string>) {
-  const number = (key: string) => readNumber(values[key] ?? '') ?? undefined
+  const number = (key: string) => readDecimal(values[key] ?? '') ?? undefined
   if ('topMm' in values) {
     return {
       typed: `top ${values['topMm']} mm, below ${values['bottomMm']} mm`,

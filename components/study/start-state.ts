@@ -1,4 +1,4 @@
-import { readNumber } from '@/components/ui/read-number'
+import { readDecimal } from '@/lib/number/rules'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
 import { jarsOfPlan } from '@/lib/protocol/rules/plan'
 import type { ProtocolRow } from '@/lib/protocol/queries'
@@ -143,7 +143,7 @@ export function whyNot(offer: Offer, draft: Draft): string | undefined {
   const missing = draft.batchIds.some((batchId) =>
     initialAttributes(plan).some(
       ({ attribute }) =>
-        !(draft.typed[typedKey(batchId, attribute)] ?? []).some((text) => readNumber(text) !== null),
+        !(draft.typed[typedKey(batchId, attribute)] ?? []).some((text) => readDecimal(text) !== null),
     ),
   )
   return missing ? 'An initial reading is missing.' : undefined

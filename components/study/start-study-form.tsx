@@ -16,7 +16,7 @@ import { TakeReadyMade } from '@/components/protocol/take-ready-made'
 import { newId } from '@/lib/db/id'
 import { ClientError, send } from '@/lib/http/fetcher'
 import { studyKeys } from '@/lib/study/schema'
-import { grouped } from '@/lib/study/rules/words'
+import { grouped } from '@/lib/number/rules'
 import { InitialFields } from './initial-fields'
 import { NeedPart } from './need-part'
 import { StationChoices } from './station-choices'
@@ -166,7 +166,7 @@ function Headline({ needs, short }: { needs: Need[]; short: Need | undefined }) 
   if (short) {
     return (
       <>
-        <b>{grouped(String(Math.ceil(short.shortG)))} g</b> are missing, so this study cannot start
+        <b>{grouped(Math.ceil(short.shortG), 0)} g</b> are missing, so this study cannot start
       </>
     )
   }
@@ -212,7 +212,7 @@ function BatchChoice({
               }
             />
             <span className="text-14 whitespace-nowrap text-soft">
-              {grouped(String(Math.floor((batch.yieldG ?? 0) - batch.takenG)))} g left
+              {grouped(Math.floor((batch.yieldG ?? 0) - batch.takenG), 0)} g left
             </span>
           </div>
         ))}

@@ -1,7 +1,7 @@
 'use client'
 
 import { Field, type FieldProps } from './field'
-import { readNumber } from './read-number'
+import { readDecimal } from '@/lib/number/rules'
 
 type Props = Omit<FieldProps, 'type' | 'value' | 'onText' | 'onChange' | 'inputMode'> & {
   value: string
@@ -12,14 +12,14 @@ type Props = Omit<FieldProps, 'type' | 'value' | 'onText' | 'onChange' | 'inputM
 /** Keeps the text as it was typed and reads decimal comma and point alike. */
 export function NumberField({ value, onText, error, className, ...rest }: Props) {
   const isUnreadable =
-    value.trim() !== '' && readNumber(value) === null && !/^[+\-\u2212]?$/.test(value.trim())
+    value.trim() !== '' && readDecimal(value) === null && !/^[+\-\u2212]?$/.test(value.trim())
   return (
     <Field
       {...rest}
       type="text"
       inputMode="decimal"
       value={value}
-      onText={(text) => onText(text, readNumber(text))}
+      onText={(text) => onText(text, readDecimal(text))}
       error={error ?? (isUnreadable ? 'Type digits, with one comma or point.' : undefined)}
       className={`text-right ${className ?? ''}`}
     />

@@ -1,7 +1,6 @@
 import { TZDate } from '@date-fns/tz'
 import { format } from 'date-fns'
-
-const thin = '\u2009'
+import { thousands } from '@/lib/science/methods/thousands'
 
 /** 2 Mar 2026, 16:42:07 +01:00 in the lab's zone: the form in which a signature's time is shown. */
 export function instantText(iso: string, zone: string): string {
@@ -22,16 +21,9 @@ export function shortDay(iso: string): string {
   return dayText(iso).replace(/ \d{4}$/, '')
 }
 
-/** Thousands with a thin gap: 41 600. */
-export function grouped(value: string): string {
-  const [whole = '', rest] = value.split('.')
-  const spaced = whole.replace(/\B(?=(\d{3})+(?!\d))/g, thin)
-  return rest === undefined ? spaced : `${spaced}.${rest}`
-}
-
 /** pH 2 decimals, viscosity 3 significant figures, percent 1 decimal. */
 export function figure(attribute: string, value: number): string {
-  if (attribute === 'viscosity') return grouped(String(Number(value.toPrecision(3))))
+  if (attribute === 'viscosity') return thousands(String(Number(value.toPrecision(3))))
   return value.toFixed(attribute === 'ph' ? 2 : 1).replace(/^-/, '\u2212')
 }
 

@@ -1,7 +1,8 @@
 import { describe, expect, it } from 'vitest'
 import fc from 'fast-check'
 import { formulaFinding } from '@/lib/formula/rules/finding'
-import { grouped, percentText, readDecimal, readScaled } from '@/lib/formula/rules/numbers'
+import { percentText } from '@/lib/formula/rules/numbers'
+import { grouped, readDecimal, readScaled } from '@/lib/number/rules'
 import { formulaTotals, phaseTotals, remainderThousandths } from '@/lib/formula/rules/totals'
 
 describe('numbers as people type them', () => {

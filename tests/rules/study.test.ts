@@ -209,7 +209,7 @@ describe('values as they are written', () => {
   it('have the figures that their attribute is worth', () => {
     expect(shownValue('ph', 5.6)).toBe('5.60')
     expect(shownValue('viscosity', 41_620)).toBe('41\u2009600')
-    expect(shownValue('viscosity', 6512)).toBe('6510')
+    expect(shownValue('viscosity', 6512)).toBe('6\u2009510')
     expect(shownValue('viscosity', 98.76)).toBe('98.8')
     expect(shownWithUnit('viscosity', 180_000)).toBe('180\u2009000 mPa·s')
     expect(shownValue('mass', -0.43)).toBe('−0.4')

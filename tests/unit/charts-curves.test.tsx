@@ -1,3 +1,4 @@
+import { grouped } from '@/lib/number/rules'
 import { renderToStaticMarkup } from 'react-dom/server'
 import { describe, expect, it } from 'vitest'
 import { Carry, carrySentence } from '@/components/charts/carry'
@@ -5,7 +6,6 @@ import { carryHeight, carryShapes } from '@/components/charts/carry-shapes'
 import type { CarryInput } from '@/components/charts/carry-data'
 import type { CurveSeries } from '@/components/charts/curve-data'
 import {
-  axisNumber,
   curveScale,
   doubtGroups,
   meanAt,
@@ -61,8 +61,8 @@ describe('curve scale', () => {
   it('takes round numbers for its ticks', () => {
     expect(niceTicks(34, 61, 5)).toEqual([35, 40, 45, 50, 55, 60])
     expect(niceTicks(0, 4, 4)).toEqual([0, 1, 2, 3, 4])
-    expect(axisNumber(41_600, 0)).toBe('41\u2009600')
-    expect(axisNumber(-0.4, 1)).toBe('\u22120.4')
+    expect(grouped(41_600, 0)).toBe('41\u2009600')
+    expect(grouped(-0.4, 1)).toBe('\u22120.4')
   })
 
   it('washes what is outside the band on either side', () => {

@@ -1,4 +1,4 @@
-import { grouped } from '@/lib/formula/rules/numbers'
+import { grouped } from '@/lib/number/rules'
 import type { BatchState, TypeFound } from '../schema'
 import { restHours } from './rest'
 

@@ -1,4 +1,4 @@
-import { readDecimal } from '@/lib/formula/rules/numbers'
+import { readDecimal } from '@/lib/number/rules'
 import { centrifuge } from '@/lib/science/centrifuge'
 import { mean } from '@/lib/science/mean'
 import { viscosity, viscosityFactor } from '@/lib/science/viscosity'

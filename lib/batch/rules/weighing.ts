@@ -1,4 +1,5 @@
-import { grouped, readDecimal } from '@/lib/formula/rules/numbers'
+import { grouped, readDecimal } from '@/lib/number/rules'
+import { dayText } from '@/lib/report/rules'
 import { netGrams, totalGrams } from '@/lib/science/making'
 import { percentOf } from '@/lib/science/percent'
 
@@ -104,10 +105,4 @@ export function instrumentDoubt({ code, result, dueOn, detail }: Instrument, tod
   if (dueOn === null) return `${code} has no check on record.`
   if (result === 'doubtful') return `${code} failed its last check. ${detail?.sentence ?? ''}`.trim()
   return dueOn < today ? `The check of ${code} was due on ${dayText(dueOn)}.` : null
-}
-
-export function dayText(day: string): string {
-  const at = new Date(`${day.slice(0, 10)}T12:00:00Z`)
-  const form = { day: 'numeric', month: 'short', year: 'numeric', timeZone: 'UTC' } as const
-  return new Intl.DateTimeFormat('en-GB', form).format(at).replace('Sept', 'Sep')
 }

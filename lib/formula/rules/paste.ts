@@ -1,5 +1,5 @@
 import { mostLines } from '../schema'
-import { grouped, readDecimal } from './numbers'
+import { grouped, readDecimal } from '@/lib/number/rules'
 import { readCells } from './pasted-cells'
 
 export type PastedLine = {

@@ -1,4 +1,4 @@
-import { readDecimal } from './numbers'
+import { readDecimal } from '@/lib/number/rules'
 
 /** The pH a formula is meant to have: one value where both ends are the same. */
 export type TargetPh = { low: number; high: number }

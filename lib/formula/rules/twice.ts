@@ -1,4 +1,5 @@
-import { readScaled, percentText } from './numbers'
+import { percentText } from './numbers'
+import { readScaled } from '@/lib/number/rules'
 import type { TypedLine } from './typed'
 
 /** An ingredient that stands more than once in a phase, by the ids of its lines. */

@@ -1,5 +1,6 @@
 import { formulaLine, formulaStep, type FormulaLine, type FormulaStep } from '../schema'
-import { moneyText, percentText, readDecimal, readScaled } from './numbers'
+import { moneyText, percentText } from './numbers'
+import { readDecimal, readScaled } from '@/lib/number/rules'
 import { remainderThousandths, type Amounts } from './totals'
 
 // What stands in the fields while a formula is written: text as typed, read once, kept when it is wrong.

@@ -1,5 +1,6 @@
 import type { FormulaLine } from '../schema'
-import { percentText, readScaled } from './numbers'
+import { percentText } from './numbers'
+import { readScaled } from '@/lib/number/rules'
 import { wholeThousandths } from './totals'
 
 type Line = Pick<FormulaLine, 'id' | 'inciName' | 'percentThousandths' | 'isRemainder'>

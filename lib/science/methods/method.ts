@@ -1,3 +1,5 @@
+import { thousands } from './thousands'
+
 /** How far a fact may be leant on, as design and code mark it: [std], [book], [practice], [memory]. */
 export type Mark = 'standard' | 'handbook' | 'practice' | 'memory'
 
@@ -79,9 +81,7 @@ export function factsOf(
 /** Every digit that the number has, thousands with a thin gap, a true minus, its unit behind it. */
 export function exactly(value: number, unit = ''): string {
   const [mantissa = '', exponent] = String(Math.abs(value)).split('e')
-  const [whole = '', decimals] = mantissa.split('.')
-  const digits = `${whole.replace(/\B(?=(\d{3})+$)/g, '\u2009')}${decimals === undefined ? '' : `.${decimals}`}`
   const power =
     exponent === undefined ? '' : ` × 10 to the power ${exponent.replace('-', '\u2212').replace('+', '')}`
-  return `${value < 0 ? '\u2212' : ''}${digits}${power}${unit === '' ? '' : ` ${unit}`}`
+  return `${value < 0 ? '\u2212' : ''}${thousands(mantissa)}${power}${unit === '' ? '' : ` ${unit}`}`
 }

@@ -1,3 +1,4 @@
+import { grouped } from '@/lib/number/rules'
 import { refuse } from '@/lib/http/errors'
 import { isSamePlace, missingInPlan } from '@/lib/protocol/rules/faults'
 import { jarsAtStation, jarsOfPlan, setAsideJars, stationName } from '@/lib/protocol/rules/plan'
@@ -125,5 +126,5 @@ function refuseCycle({ cycle }: PlannedStation, station: StationOffer, detail: o
 }
 
 function grams(value: number): string {
-  return String(Math.ceil(value - 1e-9)).replace(/\B(?=(\d{3})+(?!\d))/g, '\u2009')
+  return grouped(Math.ceil(value - 1e-9), 0)
 }

@@ -1,4 +1,5 @@
 import { attributes, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { thousands } from '@/lib/science/methods/thousands'
 
 const small = [
   'no',
@@ -18,7 +19,7 @@ const small = [
 
 /** Up to twelve in words, as one speaks. */
 export function numberWord(count: number): string {
-  return small[count] ?? grouped(String(count))
+  return small[count] ?? thousands(String(count))
 }
 
 /** A sentence begins with a capital. */
@@ -45,7 +46,7 @@ export function shownValue(attribute: string, value: number): string {
   if (!known) return String(value)
   if ('words' in known) return known.words[Math.round(value)] ?? String(value)
   const text = known.decimals === 'three figures' ? threeFigures(value) : value.toFixed(known.decimals)
-  return grouped(text.replace(/^-(0\.0*)$/, '$1').replace('-', '−'))
+  return thousands(text.replace(/^-(0\.0*)$/, '$1').replace('-', '−'))
 }
 
 export function shownWithUnit(attribute: string, value: number): string {
@@ -63,11 +64,4 @@ function threeFigures(value: number): string {
   if (value === 0) return '0'
   const text = value.toPrecision(3)
   return text.includes('e') ? String(Number(text)) : text
-}
-
-/** Thousands with a thin gap, from 10 000 on as in 1200 there is nothing to miscount. */
-export function grouped(text: string): string {
-  const [whole = '', rest] = text.split('.')
-  const gapped = whole.length > 4 ? whole.replace(/\B(?=(\d{3})+(?!\d))/g, '\u2009') : whole
-  return rest === undefined ? gapped : `${gapped}.${rest}`
 }
