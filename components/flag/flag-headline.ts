@@ -107,6 +107,8 @@ function doubtWords(rule: string): string {
       return 'was read with an instrument that wants calibrating'
     case 'conditions':
       return 'was measured otherwise than at the start'
+    case 'place':
+      return 'was read from a jar that stood elsewhere'
     case 'cycle':
       return 'was read after a cycle cut short'
     case 'type':

@@ -12,7 +12,7 @@ import { Select } from '@/components/ui/select'
 import { toast } from '@/components/ui/toast'
 import { newId } from '@/lib/db/id'
 import { ClientError, send } from '@/lib/http/fetcher'
-import type { StationPage } from '@/lib/station/queries'
+import type { StationPage } from '@/lib/station/queries/stations'
 import { stationKeys } from '@/lib/station/schema'
 
 type Station = Omit<StationPage, 'studies'>

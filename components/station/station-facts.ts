@@ -2,8 +2,8 @@ import { mktMethod } from '@/lib/science/methods/heat'
 import { excursionMethod } from '@/lib/science/methods/making'
 import { exactly, factsOf, type FigureFacts } from '@/lib/science/methods/method'
 import { hoursOfEntries } from '@/lib/science/temperature-log'
-import type { stationRecord } from '@/lib/station/queries'
-import type { Excursion, StationLimits } from '@/lib/station/rules'
+import type { stationRecord } from '@/lib/station/queries/record'
+import type { Excursion, StationLimits } from '@/lib/station/rules/record'
 
 type Record = Awaited<ReturnType<typeof stationRecord>>
 

@@ -7,7 +7,7 @@ import { jarsFromGrams } from '@/lib/science/jar-grams'
 import type { ReleasedBatch } from '@/lib/study/queries/batches'
 import { adjustedPlan, waysToFit } from '@/lib/study/rules/plan'
 import { chosenStations } from '@/lib/study/rules/stations'
-import type { StationRow } from '@/lib/station/queries'
+import type { StationRow } from '@/lib/station/queries/stations'
 import type { StartStudy, StudyAdjustments } from '@/lib/study/schema'
 
 export type Offer = {

@@ -17,6 +17,7 @@ export const tableWords: Record<string, string> = {
   ingredient: 'ingredient',
   instrument: 'instrument',
   jar: 'jar',
+  jar_move: 'jar of a move',
   lab: 'lab',
   person: 'person',
   photo: 'photo',
@@ -28,11 +29,15 @@ export const tableWords: Record<string, string> = {
   shelf_case: 'case',
   signature: 'signature',
   station: 'station',
+  station_downtime: 'planned downtime of a station',
+  station_downtime_cancel: 'cancelled downtime of a station',
+  station_move: 'move of jars',
   station_temperature: 'temperature of a station',
   study: 'study',
   study_batch: 'batch of a study',
   study_follower: 'follower of a study',
   study_station: 'station of a study',
+  study_station_move: 'move of a station’s series',
 }
 
 const actWords: Record<string, string> = { insert: 'made', update: 'changed', delete: 'removed' }
@@ -59,6 +64,11 @@ const fieldNames: Record<string, string> = {
   at_weeks: 'at week',
   time_weeks: 'at week',
   end_weeks: 'ends at week',
+  from_on: 'first day',
+  to_on: 'last day',
+  light_lux: 'light, lux',
+  light_uv_wm2: 'UV light, W/m²',
+  light_hours: 'hours of light a day',
 }
 
 /** Units that a field's name carries, said after its value. */

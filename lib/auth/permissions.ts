@@ -31,6 +31,8 @@ export const permissions = {
   'station.read': lab,
   'station.write': ['manager'],
   'station.log': ['technician', 'manager'],
+  // What happened to jars is logged by who logs a cycle's half; stations are the manager's as well.
+  'jar.move': ['technician', 'formulator', 'manager'],
   'instrument.read': lab,
   'instrument.write': ['manager'],
   'instrument.calibrate': ['technician', 'manager'],

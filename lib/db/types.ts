@@ -353,10 +353,22 @@ export interface Jar {
   setAsideFor: string | null
   shelf: number | null
   state: Generated<string>
+  stationId: string | null
   studyId: string
   studyStationId: string | null
   tareG: Numeric | null
   version: Generated<number>
+}
+
+export interface JarMove {
+  fromPlace: number
+  fromShelf: number
+  id: string
+  jarId: string
+  stationMoveId: string
+  studyStationId: string
+  toPlace: number
+  toShelf: number
 }
 
 export interface Lab {
@@ -560,6 +572,9 @@ export interface Station {
   id: string
   isActive: Generated<boolean>
   kind: string
+  lightHours: Numeric | null
+  lightLux: Numeric | null
+  lightUvWm2: Numeric | null
   lowC: Numeric | null
   name: string
   placesPerShelf: Generated<number>
@@ -567,6 +582,33 @@ export interface Station {
   temperatureC: Numeric | null
   version: Generated<number>
   walkOrder: number
+}
+
+export interface StationDowntime {
+  fromOn: string
+  id: string
+  plannedAt: Generated<string>
+  plannedBy: string
+  reason: string
+  stationId: string
+  toOn: string
+}
+
+export interface StationDowntimeCancel {
+  cancelledAt: Generated<string>
+  cancelledBy: string
+  id: string
+  reason: string
+  stationDowntimeId: string
+}
+
+export interface StationMove {
+  fromStationId: string
+  id: string
+  movedAt: Generated<string>
+  movedBy: string
+  reason: string
+  toStationId: string
 }
 
 export interface StationTemperature {
@@ -638,6 +680,19 @@ export interface StudyStation {
   voice: string
 }
 
+export interface StudyStationMove {
+  id: string
+  stationMoveId: string
+  studyStationId: string
+}
+
+export interface StudyStationStay {
+  fromAt: string | null
+  stationId: string | null
+  studyStationId: string | null
+  untilAt: string | null
+}
+
 export interface Token {
   createdAt: Generated<string>
   expiresAt: string
@@ -698,6 +753,7 @@ export interface DB {
   ingredient: Ingredient
   instrument: Instrument
   jar: Jar
+  jarMove: JarMove
   lab: Lab
   password: Password
   person: Person
@@ -713,12 +769,17 @@ export interface DB {
   shelfCase: ShelfCase
   signature: Signature
   station: Station
+  stationDowntime: StationDowntime
+  stationDowntimeCancel: StationDowntimeCancel
+  stationMove: StationMove
   stationTemperature: StationTemperature
   study: Study
   studyAmendment: StudyAmendment
   studyBatch: StudyBatch
   studyFollower: StudyFollower
   studyStation: StudyStation
+  studyStationMove: StudyStationMove
+  studyStationStay: StudyStationStay
   token: Token
   trail: Trail
   trailExemption: TrailExemption

@@ -10,7 +10,7 @@ function jars(db: Db, actor: Actor) {
     .innerJoin('study', 'study.id', 'jar.studyId')
     .innerJoin('batch', 'batch.id', 'jar.batchId')
     .leftJoin('studyStation', 'studyStation.id', 'jar.studyStationId')
-    .leftJoin('station', 'station.id', 'studyStation.stationId')
+    .leftJoin('station', 'station.id', 'jar.stationId')
     .select([
       'jar.id',
       'jar.code',

@@ -13,6 +13,15 @@ const stationFields = {
   humidityPercent: z.number().min(0).max(100).nullable().default(null),
   cycleLowC: degrees.default(null),
   cycleHighC: degrees.default(null),
+  /** What its lamps give where the jars stand, and how long a day. */
+  lightLux: z.number().positive('Lamps give more than nothing.').max(200_000).nullable().default(null),
+  lightUvWm2: z.number().positive('Lamps give more than nothing.').max(1000).nullable().default(null),
+  lightHours: z
+    .number()
+    .positive('Lamps are on for some hours.')
+    .max(24, 'A day has 24 hours.')
+    .nullable()
+    .default(null),
   walkOrder: z.number().int().min(1).max(999),
   shelves: z.number().int().min(1).max(99),
   placesPerShelf: z.number().int().min(1).max(500),
@@ -26,6 +35,9 @@ type Limits = {
   highC: number | null
   cycleLowC: number | null
   cycleHighC: number | null
+  lightLux: number | null
+  lightUvWm2: number | null
+  lightHours: number | null
 }
 
 function limitsMakeSense(station: Limits, context: z.RefinementCtx): void {
@@ -42,6 +54,10 @@ function limitsMakeSense(station: Limits, context: z.RefinementCtx): void {
     fault('cycleLowC', 'Give both temperatures of the cycle.')
   if (station.cycleLowC !== null && station.cycleHighC !== null && station.cycleLowC >= station.cycleHighC)
     fault('cycleHighC', 'The warm half must be warmer than the cold half.')
+  const isLit = station.lightLux !== null || station.lightUvWm2 !== null
+  if (isLit && station.lightHours === null) fault('lightHours', 'Say how many hours a day the lamps are on.')
+  if (!isLit && station.lightHours !== null)
+    fault('lightLux', 'Say what the lamps give, in lux or in W/m², or leave the hours out.')
 }
 
 export const newStation = z.object({ id: z.uuid(), ...stationFields }).superRefine(limitsMakeSense)
@@ -70,7 +86,37 @@ export const loggedTemperatures = z.object({
 })
 export type LoggedTemperatures = z.input<typeof loggedTemperatures>
 
+const reasonFor = (what: string) => z.string().trim().min(1, `Say why ${what}.`).max(500)
+
+export const movedJars = z.object({
+  id: z.uuid(),
+  toStationId: z.uuid(),
+  jarIds: z
+    .array(z.uuid())
+    .min(1, 'Choose the jars that are moved.')
+    .max(5000)
+    .transform((ids) => [...new Set(ids)]),
+  reason: reasonFor('the jars are moved'),
+})
+export type MovedJars = z.input<typeof movedJars>
+
+export const plannedDowntime = z
+  .object({
+    id: z.uuid(),
+    fromOn: z.iso.date('Give the first day.'),
+    toOn: z.iso.date('Give the last day.'),
+    reason: reasonFor('the station is out of use'),
+  })
+  .refine(({ fromOn, toOn }) => fromOn <= toOn, {
+    path: ['toOn'],
+    message: 'The last day lies before the first.',
+  })
+export type PlannedDowntime = z.input<typeof plannedDowntime>
+
+export const cancelledDowntime = z.object({ id: z.uuid(), reason: reasonFor('it is cancelled') })
+
 export const stationAddress = z.object({ id: z.uuid() })
+export const downtimeAddress = stationAddress.extend({ downtimeId: z.uuid() })
 export const stationRecordPeriod = z.object({
   from: z.iso.datetime({ offset: true }).optional(),
   to: z.iso.datetime({ offset: true }).optional(),
@@ -80,4 +126,7 @@ export const stationKeys = {
   list: '/api/stations',
   one: (id: string) => `/api/stations/${id}`,
   record: (id: string) => `/api/stations/${id}/temperatures`,
+  moves: (id: string) => `/api/stations/${id}/moves`,
+  downtimes: (id: string) => `/api/stations/${id}/downtimes`,
+  cancelDowntime: (id: string, downtimeId: string) => `/api/stations/${id}/downtimes/${downtimeId}/cancel`,
 }

@@ -9,6 +9,13 @@ export const studyAdjustments = z
     fillG: z.number().positive().max(5000).optional(),
     leaveOutWeeks: z.array(z.number().positive()).max(60).optional(),
     leaveOutRetains: z.boolean().optional(),
+    /** Stations of the protocol that do not start, by their position in its plan. */
+    leaveOutStations: z.array(z.number().int().min(0)).max(12).optional(),
+    /** Spares at a station of the protocol, by its position, where they are not as many as it asks for. */
+    spares: z
+      .array(z.object({ position: z.number().int().min(0), spares: z.number().int().min(0).max(10) }))
+      .max(12)
+      .optional(),
   })
   .default({})
 export type StudyAdjustments = z.output<typeof studyAdjustments>
@@ -37,9 +44,11 @@ export const startedStudy = z.object({
   title: z.string().trim().min(1, 'Give the study a title.').max(160),
   protocolVersionId: z.uuid(),
   batchIds: z.array(z.uuid()).min(1, 'Choose at least one batch.').max(12),
-  /** The lab's station for each of the plan's stations, by position; what is left out is chosen by its fit. */
+  /** The lab's station for each of the protocol's stations, by position; what is left out is chosen by its fit. */
   stationChoices: z.array(z.object({ position: z.number().int().min(0), stationId: z.uuid() })).default([]),
   adjustments: studyAdjustments,
+  /** Why some of the protocol's stations do not start. */
+  whyInPart: z.string().trim().max(500).default(''),
   startedAt: z.iso.datetime({ offset: true }).optional(),
   initialReadings: z.array(initialReading).max(200),
   clientId: z.uuid().nullable().default(null),

@@ -266,9 +266,21 @@ describe('starting a study', () => {
       stationChoices: [{ position: 3, stationId: narrow }],
     })
     expect(full.status).toBe(409)
-    expect(full.body.error.sentence).toBe(
-      'Small oven has four free places, 11 are needed. Choose another station, or make room there.',
+    expect(full.body.error.sentence).toMatch(
+      /^Small oven has four free places, 11 are needed\. What would fit: use Station 45, \d+ free places; start without 45 °C\.$/,
     )
+    const { detail } = full.body.error
+    expect(detail).toMatchObject({ kind: 'station', position: 3, free: 4, needed: 11 })
+    // What it offers does start.
+    const fitting = detail.options.find((option: { kind: string }) => option.kind === 'without')
+    const again = await start({
+      batchIds: [batchId],
+      initialReadings: initialOf(batchId),
+      stationChoices: [{ position: 3, stationId: narrow }],
+      adjustments: fitting.adjustments,
+      whyInPart: 'The big oven is being repaired.',
+    })
+    expect(again.status).toBe(200)
     const wrong = await start({
       batchIds: [batchId],
       initialReadings: initialOf(batchId),

@@ -178,6 +178,7 @@ const table: Record<Permission, string> = {
   'station.read': 'yes yes yes yes no',
   'station.write': 'no no no yes no',
   'station.log': 'yes no no yes no',
+  'jar.move': 'yes yes no yes no',
   'instrument.read': 'yes yes yes yes no',
   'instrument.write': 'no no no yes no',
   'instrument.calibrate': 'yes no no yes no',

@@ -17,6 +17,11 @@ import { isWorded } from '@/lib/study/rules/words'
 import { chosenStations } from '@/lib/study/rules/stations'
 
 const plan = readyMadePlan('screen', 'cream')
+const refuse = (asked: ProtocolPlan, chosen: Parameters<typeof refuseStations>[1]) =>
+  refuseStations(asked, chosen, 1, {
+    ...{ protocolPlan: asked, adjustments: {}, stations: [], leavings: [] },
+    today: '2026-12-01',
+  })
 const [cold, room, warm] = plan.stations as [PlannedStation, PlannedStation, PlannedStation]
 const place = (id: string, temperatureC: number | null, kind = 'temperature', places = 100) => ({
   id,
@@ -126,23 +131,32 @@ describe('jars', () => {
     expect(both.stations.map(stationName)).toEqual(['40 °C', '40 °C, lying'])
     const chosen = chosenStations(both.stations, [place('a', 40)], [])
     expect(chosen.map((one) => one?.id)).toEqual(['a', 'a'])
-    expect(() => refuseStations(both, chosen, 1)).not.toThrow()
+    expect(() => refuse(both, chosen)).not.toThrow()
     const small = [place('a', 40, 'temperature', 21)]
-    expect(() => refuseStations(both, chosenStations(both.stations, small, []), 1)).toThrow(
+    expect(() => refuse(both, chosenStations(both.stations, small, []))).toThrow(
       /21 free places, 22 are needed/,
     )
-    expect(() => refuseStations({ ...plan, stations: [warm, warm] }, [small[0]!, small[0]!], 1)).toThrow(
+    expect(() => refuse({ ...plan, stations: [warm, warm] }, [small[0]!, small[0]!])).toThrow(
       /is chosen twice/,
     )
   })
 
-  it('which station has the lamps is said by a person', () => {
+  it('jars in light and in foil stand at the station that has lamps, and no other jar does', () => {
     const lit = { ...plan, stations: [{ ...room, light: 'exposed' as const }] }
-    const chosen = chosenStations(lit.stations, [place('a', 25)], [])
-    expect(chosen).toEqual([null])
-    expect(() => refuseStations(lit, chosen, 1)).toThrow(/^No light station is chosen for 25 °C, in light/)
-    const byHand = chosenStations(lit.stations, [place('a', 25)], [{ position: 0, stationId: 'a' }])
-    expect(() => refuseStations(lit, byHand, 1)).not.toThrow()
+    const dark = place('a', 25)
+    const lamps = { ...place('b', 25), lightLux: 10_000, lightUvWm2: null }
+    expect(chosenStations(lit.stations, [dark, lamps], [])).toEqual([lamps])
+    expect(chosenStations([{ ...room, light: 'in foil' as const }], [dark, lamps], [])).toEqual([lamps])
+    expect(chosenStations([room], [lamps], [])).toEqual([null])
+    expect(() => refuse(lit, chosenStations(lit.stations, [dark], []))).toThrow(
+      /^No station of the lab at 25 °C has lamps, so none can be 25 °C, in light\./,
+    )
+    expect(() => refuse(lit, [dark])).toThrow(
+      /^Cabinet a has no lamps on record, and 25 °C, in light needs them\./,
+    )
+    expect(() => refuse({ ...plan, stations: [room] }, [lamps])).toThrow(
+      /^Cabinet b has lamps, and 25 °C stands in the dark\./,
+    )
   })
 })
 
@@ -151,11 +165,11 @@ describe('freeze-thaw', () => {
 
   it('is refused to a cabinet that cycles otherwise', () => {
     const deep = { ...plan, stations: [{ ...plan.stations[4]!, cycle }] }
-    expect(() => refuseStations(deep, [place('f', null, 'freeze-thaw')], 1)).toThrow(
+    expect(() => refuse(deep, [place('f', null, 'freeze-thaw')])).toThrow(
       /cycles between −10 °C and 25 °C, the protocol between −20 °C and 25 °C/,
     )
     const asThere = { ...plan, stations: [{ ...plan.stations[4]!, cycle: { ...cycle, coldC: -10 } }] }
-    expect(() => refuseStations(asThere, [place('f', null, 'freeze-thaw')], 1)).not.toThrow()
+    expect(() => refuse(asThere, [place('f', null, 'freeze-thaw')])).not.toThrow()
     expect(cycleText(cycle)).toBe('16 h at −20 °C, frozen through, then 8 h at 25 °C')
   })
 

@@ -106,12 +106,15 @@ it('tells every amendment of the study among what weakens a case, with its reaso
     amendments: [
       {
         number: 1,
+        kind: 'station end',
         sentence: '40 °C ended early, in week 16.',
         reason: 'The oven failed.',
         madeAt: '2026-11-17T09:00:00.000Z',
         madeBy: 'LB',
       },
     ],
+    moves: [],
+    stations: [],
     station: { name: 'room cabinet' },
     attributes: [],
     record: {} as TemperatureRecord,

@@ -6,7 +6,7 @@ import { plannedJars } from '@/lib/study/rules/jars'
 import { adjustedPlan, waysToFit } from '@/lib/study/rules/plan'
 import { chosenStations, fittingStations } from '@/lib/study/rules/stations'
 import { shownValue, shownWithUnit } from '@/lib/study/rules/words'
-import { freePlaces } from '@/lib/station/rules'
+import { freePlaces } from '@/lib/station/rules/places'
 
 describe('the calendar', () => {
   it('counts in days of the calendar, so a change of clocks moves nothing', () => {

@@ -3,7 +3,7 @@ import { StationList } from '@/components/station/station-list'
 import { may } from '@/lib/auth/permissions'
 import { page } from '@/lib/http/page'
 import { getLab } from '@/lib/lab/queries'
-import { listStations } from '@/lib/station/queries'
+import { listStations } from '@/lib/station/queries/stations'
 
 export const permission = 'station.read'
 export const metadata: Metadata = { title: 'Stations' }

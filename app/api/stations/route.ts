@@ -1,6 +1,6 @@
 import { read, write } from '@/lib/http/route'
-import { createStation } from '@/lib/station/commands'
-import { listStations } from '@/lib/station/queries'
+import { createStation } from '@/lib/station/commands/keep-station'
+import { listStations } from '@/lib/station/queries/stations'
 import { newStation } from '@/lib/station/schema'
 
 export const GET = read({

@@ -95,12 +95,12 @@ async function listWalk(db: Db, today: string) {
       (eb) =>
         eb
           .selectFrom('pull')
-          .innerJoin('studyStation as ss', 'ss.id', 'pull.studyStationId')
           .innerJoin('study', 'study.id', 'pull.studyId')
           .innerJoin('pullJar as pj', 'pj.pullId', 'pull.id')
+          .innerJoin('jar', 'jar.id', 'pj.jarId')
           .select('pull.dueOn as nextOn')
           .select(({ fn }) => fn.countAll<number>().as('nextCount'))
-          .whereRef('ss.stationId', '=', 'station.id')
+          .whereRef('jar.stationId', '=', 'station.id')
           .where('study.state', '=', 'running')
           .where('pj.state', '=', 'due')
           .where('pull.dueOn', '>', today)

@@ -1,6 +1,7 @@
 import { sql } from 'kysely'
 import type { Db, Trx } from '@/lib/db/client'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
+import type { JarStay } from '@/lib/station/rules/moves'
 
 export type UsedInstrument = {
   id: string
@@ -26,8 +27,9 @@ export async function findPullJar(db: Db | Trx, pullJarId: string, instrumentIds
     .innerJoin('pull', 'pull.id', 'pj.pullId')
     .innerJoin('study', 'study.id', 'pj.studyId')
     .innerJoin('studyStation as ss', 'ss.id', 'pull.studyStationId')
-    .innerJoin('station', 'station.id', 'ss.stationId')
+    .innerJoin('station as origin', 'origin.id', 'ss.stationId')
     .innerJoin('jar', 'jar.id', 'pj.jarId')
+    .innerJoin('station', 'station.id', 'jar.stationId')
     .leftJoin('person as opener', 'opener.id', 'pj.openedBy')
     .leftJoin('person as closer', 'closer.id', 'pj.closedBy')
     .select([
@@ -63,8 +65,9 @@ export async function findPullJar(db: Db | Trx, pullJarId: string, instrumentIds
       'ss.temperatureC',
       'ss.position',
       'station.name as stationName',
-      'station.cycleLowC',
-      'station.cycleHighC',
+      'origin.kind as stationKind',
+      'origin.cycleLowC',
+      'origin.cycleHighC',
       'jar.id as jarId',
       'jar.code',
       'jar.kind',
@@ -88,6 +91,12 @@ export async function findPullJar(db: Db | Trx, pullJarId: string, instrumentIds
           'reachedC', step.reached_c, 'isFrozenThrough', step.is_frozen_through,
           'hours', extract(epoch from step.ended_at - step.begun_at) / 3600)), '[]')
         from cycle_step step where step.study_station_id = ss.id)`.as('cycleHalves'),
+      sql<JarStay[]>`(select coalesce(jsonb_agg(jsonb_build_object('at', m.moved_at, 'name', target.name,
+          'kind', target.kind, 'temperatureC', target.temperature_c, 'cycleLowC', target.cycle_low_c,
+          'cycleHighC', target.cycle_high_c,
+          'isLit', target.light_lux is not null or target.light_uv_wm2 is not null) order by m.moved_at), '[]')
+        from jar_move jm join station_move m on m.id = jm.station_move_id
+          join station target on target.id = m.to_station_id where jm.jar_id = jar.id)`.as('stays'),
     ])
     .where('pj.id', '=', pullJarId)
     .executeTakeFirst()

@@ -5,6 +5,7 @@ import { weeksSince } from '@/lib/science/months'
 import type { Frame } from '@/lib/series/queries/frame'
 import { seriesUnits } from '@/lib/series/rules/input'
 import { sentenceContext } from '@/lib/series/rules/spoken'
+import { placeDoubts } from '@/lib/station/rules/moves'
 import { dayIn } from '@/lib/study/rules/calendar'
 import type { PullJar } from '../queries/pull-jar'
 import { missingAttributes, type ReadEntry } from './read-entries'
@@ -27,9 +28,16 @@ export function judgeEntries(
   const keys = new Set<AttributeKey>(entries.map(({ entry }) => entry.attribute))
   const units = seriesUnits(frame, keys, [])
   const station = frame.study.stations.find((one) => one.id === jar.studyStationId)!
-  const common = jar.isFreezeThaw
-    ? cycleDoubts(jar, jar.cycleHalves, jar.plan.stations[jar.position]?.cycle)
-    : []
+  const planned = jar.plan.stations[jar.position]
+  const common = [
+    ...(jar.isFreezeThaw ? cycleDoubts(jar, jar.cycleHalves, planned?.cycle) : []),
+    ...placeDoubts(
+      { ...jar, kind: jar.stationKind, isLit: planned?.light !== undefined },
+      jar.stays,
+      measuredAt,
+      frame.study.zone,
+    ),
+  ]
   for (const key of keys) {
     const own = entries.filter(({ entry }) => entry.attribute === key)
     const unit = units.find(

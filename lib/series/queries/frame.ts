@@ -60,7 +60,9 @@ async function getFrameStudy(db: Db | Trx, studyId: string) {
       coalesce((select time_zone from lab limit 1), 'UTC') as zone, app_now() as now,
       (select coalesce(jsonb_agg(jsonb_build_object('id', ss.id, 'name', st.name, 'temperatureC', ss.temperature_c,
           'isFreezeThaw', ss.is_freeze_thaw, 'variant', ss.variant, 'voice', ss.voice) order by ss.position), '[]')
-        from study_station ss join station st on st.id = ss.station_id where ss.study_id = s.id) as stations,
+        from study_station ss
+          join study_station_stay stay on stay.study_station_id = ss.id and stay.until_at is null
+          join station st on st.id = stay.station_id where ss.study_id = s.id) as stations,
       (select coalesce(jsonb_agg(jsonb_build_object('id', b.id, 'code', b.code, 'madeAt', b.made_at,
           'lines', (select coalesce(jsonb_agg(jsonb_build_object('percent', l.percent_thousandths / 1000.0,
               'density', l.density, 'internal', l.is_internal)), '[]')

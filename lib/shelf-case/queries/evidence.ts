@@ -1,3 +1,4 @@
+import { sql } from 'kysely'
 import type { Db, Trx } from '@/lib/db/client'
 import type { Actor } from '@/lib/auth/actor'
 import { refuse } from '@/lib/http/errors'
@@ -8,7 +9,7 @@ import { assessStudy } from '@/lib/series/rules/assess'
 export type Evidence = Awaited<ReturnType<typeof loadEvidence>>
 
 /**
- * Everything a case is computed from, in eleven statements whatever the size of the study. The series are judged anew
+ * Everything a case is computed from, in twelve statements whatever the size of the study. The series are judged anew
  * from the readings, so that what a case freezes is what its inputs give.
  */
 export async function loadEvidence(db: Db | Trx, actor: Actor, studyId: string) {
@@ -45,6 +46,20 @@ export async function loadEvidence(db: Db | Trx, actor: Actor, studyId: string) 
     ])
     .where('ss.studyId', '=', studyId)
     .orderBy('ss.position')
+    .execute()
+  const moves = await db
+    .selectFrom('jarMove')
+    .innerJoin('stationMove as m', 'm.id', 'jarMove.stationMoveId')
+    .innerJoin('studyStation as ss', 'ss.id', 'jarMove.studyStationId')
+    .innerJoin('station as origin', 'origin.id', 'm.fromStationId')
+    .innerJoin('station as target', 'target.id', 'm.toStationId')
+    .innerJoin('person as p', 'p.id', 'm.movedBy')
+    .select(['ss.id as studyStationId', 'm.reason', 'm.movedAt', 'p.initials as movedBy'])
+    .select(['origin.name as fromName', 'target.name as toName'])
+    .select(({ fn }) => fn.countAll<number>().as('jars'))
+    .where('ss.studyId', '=', studyId)
+    .groupBy(['ss.id', 'm.id', 'origin.name', 'target.name', 'p.initials'])
+    .orderBy('m.movedAt')
     .execute()
   const { assessed } = assessStudy(await loadFrame(db, studyId), null)
   const readings = await db
@@ -106,7 +121,7 @@ export async function loadEvidence(db: Db | Trx, actor: Actor, studyId: string) 
   const amendments = await db
     .selectFrom('studyAmendment as a')
     .innerJoin('person as p', 'p.id', 'a.madeBy')
-    .select(['a.number', 'a.sentence', 'a.reason', 'a.madeAt', 'p.initials as madeBy'])
+    .select(['a.number', 'a.kind', 'a.sentence', 'a.reason', 'a.madeAt', 'p.initials as madeBy'])
     .where('a.studyId', '=', studyId)
     .orderBy('a.number')
     .execute()
@@ -128,16 +143,25 @@ export async function loadEvidence(db: Db | Trx, actor: Actor, studyId: string) 
     flags,
     missed,
     amendments,
+    moves,
   }
 }
 
-/** Temperatures of a station while the study's jars stood in it. */
-export async function loadTemperatures(db: Db | Trx, stationId: string, from: string) {
+/** The lab's stations whose temperature a station of the study had, one after the other, each with its entries. */
+export async function loadStays(db: Db | Trx, studyStationId: string) {
   return db
-    .selectFrom('stationTemperature')
-    .select(['measuredAt', 'temperatureC'])
-    .where('stationId', '=', stationId)
-    .where('measuredAt', '>=', from)
-    .orderBy('measuredAt')
+    .selectFrom('studyStationStay as stay')
+    .innerJoin('station', 'station.id', 'stay.stationId')
+    .select(['station.name', 'station.lowC', 'station.highC'])
+    .select(sql<string>`stay.from_at`.as('fromAt'))
+    .select(
+      sql<{ measuredAt: string; temperatureC: number }[]>`(select coalesce(jsonb_agg(jsonb_build_object(
+          'measuredAt', t.measured_at, 'temperatureC', t.temperature_c) order by t.measured_at), '[]')
+        from station_temperature t where t.station_id = stay.station_id and t.measured_at >= stay.from_at
+          and t.measured_at < coalesce(stay.until_at, 'infinity'))`.as('entries'),
+    )
+    .where('stay.studyStationId', '=', studyStationId)
+    .orderBy('stay.fromAt')
     .execute()
 }
+export type Stay = Awaited<ReturnType<typeof loadStays>>[number]

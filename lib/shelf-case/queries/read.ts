@@ -6,7 +6,7 @@ import { caseStation, computeCase } from '@/lib/shelf-case/rules/build'
 import type { CaseContent } from '@/lib/shelf-case/rules/content'
 import { assertApprovedProtocol } from '@/lib/shelf-case/rules/refusals'
 import { signatureHash, type SignedFacts } from '@/lib/shelf-case/queries/signature'
-import { loadEvidence, loadTemperatures } from '@/lib/shelf-case/queries/evidence'
+import { loadEvidence, loadStays } from '@/lib/shelf-case/queries/evidence'
 
 export type CaseRow = Awaited<ReturnType<typeof listCases>>[number]
 export type CaseDetail = Awaited<ReturnType<typeof getCase>>
@@ -139,11 +139,14 @@ export async function computeFor(db: Db | Trx, actor: Actor, studyId: string, st
   const evidence = await loadEvidence(db, actor, studyId)
   assertApprovedProtocol(evidence.study)
   const station = caseStation(evidence, studyStationId)
+  const left = evidence.amendments.find((one) => one.kind === 'not started')
   if (!station)
     throw refuse.conflict(
-      `Study ${evidence.study.code} has no station at 15 to 30 °C that decides, so it cannot carry a shelf life.`,
+      left
+        ? `Study ${evidence.study.code} began in part: ${left.sentence} What is left cannot carry a shelf life.`
+        : `Study ${evidence.study.code} has no station at 15 to 30 °C that decides, so it cannot carry a shelf life.`,
     )
-  const temperatures = await loadTemperatures(db, station.stationId, evidence.study.startedAt)
+  const stays = await loadStays(db, station.id)
   return {
     studyId,
     studyStationId: station.id,
@@ -157,7 +160,7 @@ export async function computeFor(db: Db | Trx, actor: Actor, studyId: string, st
     openOut: evidence.flags.filter(
       (f) => f.level === 'out' && f.state === 'open' && f.studyStationId === station.id,
     ),
-    computed: computeCase(evidence, station, temperatures),
+    computed: computeCase(evidence, station, stays),
   }
 }
 

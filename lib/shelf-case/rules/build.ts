@@ -8,11 +8,9 @@ import type { AttributeEvidence, CaseContent, ReadingEvidence } from '@/lib/shel
 import { rowsOf, shelvesOf } from '@/lib/shelf-case/rules/shelves'
 import { temperatureRecord } from '@/lib/shelf-case/rules/temperature'
 import { weaknesses } from '@/lib/shelf-case/rules/weakness'
-import type { Evidence } from '@/lib/shelf-case/queries/evidence'
+import type { Evidence, Stay } from '@/lib/shelf-case/queries/evidence'
 
 export type Computed = Omit<CaseContent, 'case' | 'proposal' | 'putForward' | 'isInvented'>
-
-type Temperatures = { measuredAt: string; temperatureC: number }[]
 
 /** The station that a case speaks for: the warmest that decides at 15 to 30 °C, unless one is named. */
 export function caseStation(evidence: Evidence, studyStationId: string | null) {
@@ -31,7 +29,7 @@ export function caseStation(evidence: Evidence, studyStationId: string | null) {
 export function computeCase(
   evidence: Evidence,
   station: Evidence['stations'][number],
-  temperatures: Temperatures,
+  stays: Stay[],
 ): Computed {
   const plan = protocolPlan.parse(evidence.study.plan)
   const weeksOf = (iso: string) => weeksSince(evidence.study.startedAt, iso)
@@ -72,7 +70,7 @@ export function computeCase(
     // What statistics carry first, then what was only seen to pass.
     .toSorted((a, b) => Number(b.basis === 'regression') - Number(a.basis === 'regression'))
   const limiting = limitingOf(attributes)
-  const record = temperatureRecord(station, temperatures)
+  const record = temperatureRecord(stays)
   const missing = evidence.missed.map((m) => ({
     jar: m.jar,
     station: evidence.stations.find((s) => s.id === m.studyStationId)?.name ?? '',
@@ -113,6 +111,8 @@ export function computeCase(
       batches: evidence.batches,
       flags: evidence.flags,
       amendments: evidence.amendments,
+      moves: evidence.moves,
+      stations: evidence.stations,
       station,
       attributes,
       record,

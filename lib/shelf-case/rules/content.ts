@@ -113,6 +113,8 @@ export type TemperatureRecord = {
   calc: Calculation<'mkt', Parameters<typeof mkt>[0], ReturnType<typeof mkt>>
   /** What the excursions are found from: the first entry, hours since it, the station's limits. Since format 2. */
   log?: { firstAt: string; hours: number[]; limits: TemperatureLimits }
+  /** Where the jars were moved: each station in turn, with how many of the entries are its own, and its limits. */
+  stays?: { station: string; fromAt: string; entries: number; limits: TemperatureLimits }[]
   excursions: { from: string; to: string; hours: number; worstC: number }[]
 }
 

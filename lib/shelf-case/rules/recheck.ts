@@ -199,6 +199,8 @@ function weaknessFigures(content: CaseContent): Rechecked[] {
     ...content,
     flags: [],
     amendments: [],
+    moves: [],
+    stations: [],
     record: content.temperatureRecord,
     missing: [],
   })
@@ -208,9 +210,9 @@ function weaknessFigures(content: CaseContent): Rechecked[] {
 
 function temperatureFigures({ temperatureRecord: record }: CaseContent): Rechecked[] {
   if (!record?.log) return []
-  const { temperaturesC, hoursEach } = record.calc.input
+  const { hoursEach } = record.calc.input
   return [
     figure('hours that each temperature stands for', hoursEach, hoursOfEntries(record.log.hours)),
-    figure('excursions of the station', record.excursions, excursionsOf(record.log, temperaturesC)),
+    figure('excursions of the station', record.excursions, excursionsOf(record)),
   ]
 }

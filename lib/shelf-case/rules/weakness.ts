@@ -1,4 +1,5 @@
 import { dayText } from '@/lib/report/rules'
+import { degrees } from '@/lib/study/rules/finding'
 import type {
   AttributeEvidence,
   CaseContent,
@@ -12,6 +13,8 @@ export function weaknesses(from: {
   batches: unknown[]
   flags: Evidence['flags']
   amendments: Evidence['amendments']
+  moves: Evidence['moves']
+  stations: Pick<Evidence['stations'][number], 'id' | 'temperatureC' | 'isFreezeThaw' | 'name'>[]
   station: { name: string }
   attributes: AttributeEvidence[]
   record: TemperatureRecord | null
@@ -70,10 +73,20 @@ export function weaknesses(from: {
       by: f.answeredBy && f.answeredAt ? `${f.answeredBy}, ${dayText(f.answeredAt)}` : null,
     }))
   const amended = from.amendments.map((a): Weakness => ({
-    state: 'answered',
-    title: `Amendment ${a.number} while the study ran`,
+    // What the protocol asked for and nobody has measured is missing, however well the rest was.
+    state: a.kind === 'not started' ? 'missing' : 'answered',
+    title:
+      a.kind === 'not started'
+        ? 'Part of the protocol not started'
+        : `Amendment ${a.number} while the study ran`,
     text: `${a.sentence} ${a.reason}`,
     by: `${a.madeBy}, ${dayText(a.madeAt)}`,
+  }))
+  const moved = from.moves.map((m): Weakness => ({
+    state: 'answered',
+    title: `${m.jars} ${m.jars === 1 ? 'jar' : 'jars'} moved to ${m.toName}`,
+    text: `${seriesName(from.stations.find((one) => one.id === m.studyStationId))}, from ${m.fromName}. ${m.reason}`,
+    by: `${m.movedBy}, ${dayText(m.movedAt)}`,
   }))
   const missing = from.missing.map((m): Weakness => ({
     state: 'missing',
@@ -81,7 +94,19 @@ export function weaknesses(from: {
     text: m.reason,
     by: null,
   }))
-  return [...stands, ...answered, ...amended, ...missing]
+  const [left, done] = [amended.filter(isMissing), amended.filter((one) => !isMissing(one))]
+  return [...stands, ...answered, ...done, ...moved, ...left, ...missing]
+}
+
+function isMissing({ state }: Weakness): boolean {
+  return state === 'missing'
+}
+
+function seriesName(
+  station: { temperatureC: number | null; isFreezeThaw: boolean; name: string } | undefined,
+) {
+  if (station?.isFreezeThaw) return 'Freeze-thaw'
+  return station?.temperatureC == null ? capital(station?.name ?? '') : degrees(station.temperatureC)
 }
 
 function capital(text: string): string {

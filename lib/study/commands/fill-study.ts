@@ -4,9 +4,9 @@ import type { Trx } from '@/lib/db/client'
 import { newId } from '@/lib/db/id'
 import { jarCodes } from '@/lib/jar/rules'
 import { variantOf } from '@/lib/protocol/rules/plan'
-import type { ProtocolPlan } from '@/lib/protocol/schema'
-import { listTakenPlaces } from '@/lib/station/queries'
-import { freePlaces } from '@/lib/station/rules'
+import type { PlannedStation, ProtocolPlan } from '@/lib/protocol/schema'
+import { listTakenPlaces } from '@/lib/station/queries/places'
+import { freePlaces } from '@/lib/station/rules/places'
 import { pullsOf } from '@/lib/study/rules/calendar'
 import type { InitialRow } from '@/lib/study/rules/initial'
 import { plannedJars } from '@/lib/study/rules/jars'
@@ -112,6 +112,7 @@ export async function insertJars(
         studyId,
         batchId,
         studyStationId: position === null ? null : stations[position]!.id,
+        stationId: position === null ? null : stations[position]!.stationId,
         kind,
         state,
         shelf: spot?.shelf ?? null,
@@ -177,6 +178,32 @@ export async function insertInitial(
         ...row,
         detail: JSON.stringify(row.detail),
         measuredAt: row.measuredAt ?? startedAt,
+      })),
+    )
+    .execute()
+}
+
+/** What the protocol asks for and the study does not have stands among its amendments from the first day. */
+export async function insertNotStarted(
+  trx: Trx,
+  actor: Actor,
+  studyId: string,
+  stations: { sentence: string; planned: PlannedStation }[],
+  reason: string,
+): Promise<void> {
+  if (stations.length === 0) return
+  await trx
+    .insertInto('studyAmendment')
+    .values(
+      stations.map(({ sentence, planned }, index) => ({
+        id: newId(),
+        studyId,
+        number: index + 1,
+        kind: 'not started',
+        sentence,
+        before: JSON.stringify({ station: planned }),
+        reason,
+        madeBy: actor.personId,
       })),
     )
     .execute()

@@ -4,12 +4,16 @@ import type { Trx } from '@/lib/db/client'
 import { newId } from '@/lib/db/id'
 import { refuse } from '@/lib/http/errors'
 import { findProtocolVersion } from '@/lib/protocol/queries'
+import type { ProtocolPlan } from '@/lib/protocol/schema'
 import { recomputeSeries } from '@/lib/series/commands'
-import { listStations } from '@/lib/station/queries'
+import { holdPlaces } from '@/lib/station/commands/hold-places'
+import { listLeavings } from '@/lib/station/queries/places'
+import { listStations } from '@/lib/station/queries/stations'
 import {
   insertBatches,
   insertInitial,
   insertJars,
+  insertNotStarted,
   insertPullJars,
   insertPulls,
   insertStations,
@@ -17,7 +21,8 @@ import {
 import { listBatchesForStart } from '@/lib/study/queries/batches'
 import { dayIn } from '@/lib/study/rules/calendar'
 import { initialRows, type InitialRow } from '@/lib/study/rules/initial'
-import { adjustedPlan } from '@/lib/study/rules/plan'
+import { notStarted, refuseInPart } from '@/lib/study/rules/in-part'
+import { adjustedPlan, startedPositions } from '@/lib/study/rules/plan'
 import { refuseBatch, refusePlan, refuseShortBatch, refuseStations } from '@/lib/study/rules/refusals'
 import { chosenStations } from '@/lib/study/rules/stations'
 import type { StartedStudy } from '@/lib/study/schema'
@@ -43,6 +48,7 @@ export async function startStudy(
 
   const version = await findProtocolVersion(trx, input.protocolVersionId)
   if (!version) throw refuse.notFound('There is no such protocol. Choose one from the list.')
+  refuseInPart(version.plan, input.adjustments, input.whyInPart)
   const plan = adjustedPlan(version.plan, input.adjustments)
   refusePlan(plan)
   const batches = await findBatches(trx, input.batchIds)
@@ -51,8 +57,15 @@ export async function startStudy(
   const lab = await listStations(trx, actor)
   const stations = refuseStations(
     plan,
-    chosenStations(plan.stations, lab, input.stationChoices),
+    chosenStations(plan.stations, lab, choicesOf(version.plan, input)),
     batches.length,
+    {
+      protocolPlan: version.plan,
+      adjustments: input.adjustments,
+      stations: lab,
+      leavings: await listLeavings(trx),
+      today: dayIn(timeZone, now),
+    },
   )
   const initial = initialRows(plan.attributes, batches, input.initialReadings)
   const startedAt = input.startedAt ?? now
@@ -96,6 +109,16 @@ export async function startStudy(
   const jars = await insertJars(trx, input.id, plan, batches, studyStations, random)
   await insertPullJars(trx, input.id, jars, pulls)
   await insertInitial(trx, actor, input.id, initial, startedAt)
+  await insertNotStarted(
+    trx,
+    actor,
+    input.id,
+    notStarted(version.plan, input.adjustments, lab, batches.length).map((one) => ({
+      ...one,
+      planned: version.plan.stations[one.position]!,
+    })),
+    input.whyInPart,
+  )
   await trx
     .insertInto('studyFollower')
     .values({ id: newId(), studyId: input.id, personId: actor.personId })
@@ -104,12 +127,21 @@ export async function startStudy(
   return { id: input.id, code, jars: jars.length }
 }
 
+/** Choices name stations by their position in the protocol; the study's own plan holds those that start. */
+function choicesOf(plan: ProtocolPlan, { adjustments, stationChoices }: StartedStudy) {
+  const started = startedPositions(plan, adjustments)
+  return stationChoices.flatMap(({ position, stationId }) => {
+    const at = started.indexOf(position)
+    return at === -1 ? [] : [{ position: at, stationId }]
+  })
+}
+
 /**
  * Starts are rare and share places, numbers and the grams of a batch: one lock lets them pass one by one. The
  * select around it sees what the start before it wrote, because each statement has its own snapshot.
  */
 async function holdStarts(trx: Trx) {
-  await sql`select pg_advisory_xact_lock(hashtext('start of a study'))`.execute(trx)
+  await holdPlaces(trx)
   const { rows } = await sql<{ now: string; timeZone: string; nextNumber: number }>`
     select app_now() as now,
       coalesce((select time_zone from lab), 'UTC') as "timeZone",

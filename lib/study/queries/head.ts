@@ -15,6 +15,41 @@ export type StudyAmendment = {
   madeOn: string
 }
 
+/** Jars that were moved, by move, with the stations of the study they belong to. */
+export type StudyMove = {
+  movedOn: string
+  movedBy: string
+  reason: string
+  fromName: string
+  toName: string
+  jars: { position: number; count: number }[]
+}
+const movesOf = sql<StudyMove[]>`(select coalesce(jsonb_agg(jsonb_build_object(
+      'movedOn', (m.moved_at at time zone coalesce((select time_zone from lab), 'UTC'))::date,
+      'movedBy', p.name, 'reason', m.reason, 'fromName', origin.name, 'toName', target.name,
+      'jars', (select jsonb_agg(jsonb_build_object('position', part.position, 'count', part.count) order by part.position)
+        from (select own.position, count(*) from jar_move jm join study_station own on own.id = jm.study_station_id
+          where jm.station_move_id = m.id and own.study_id = study.id group by own.position) part))
+    order by m.moved_at), '[]')
+  from station_move m join person p on p.id = m.moved_by
+    join station origin on origin.id = m.from_station_id join station target on target.id = m.to_station_id
+  where m.id in (select jm.station_move_id from jar_move jm join study_station own on own.id = jm.study_station_id
+    where own.study_id = study.id))`.as('moves')
+
+/** Days ahead on which a station with jars of the study is out of use, and the pulls that fall into them. */
+export type StudyDowntime = { name: string; fromOn: string; toOn: string; reason: string; pulls: string[] }
+const downtimesOf = sql<StudyDowntime[]>`(select coalesce(jsonb_agg(jsonb_build_object('name', place.name,
+      'fromOn', d.from_on, 'toOn', d.to_on, 'reason', d.reason,
+      'pulls', (select coalesce(jsonb_agg(distinct pull.label), '[]') from pull
+        join pull_jar pj on pj.pull_id = pull.id and pj.state = 'due' join jar on jar.id = pj.jar_id
+        where pull.study_id = study.id and jar.station_id = d.station_id and pull.due_on between d.from_on and d.to_on))
+    order by d.from_on), '[]')
+  from station_downtime d join station place on place.id = d.station_id
+  where study.state = 'running' and d.to_on >= (app_now() at time zone coalesce((select time_zone from lab), 'UTC'))::date
+    and not exists (select from station_downtime_cancel c where c.station_downtime_id = d.id)
+    and exists (select from jar where jar.study_id = study.id and jar.station_id = d.station_id
+      and jar.shelf is not null and jar.state in ('stored','pulled','resting')))`.as('downtimes')
+
 /** A study with the day it is in the lab: what every page of it begins with. */
 export async function getStudyHead(db: Db, actor: Actor, code: string) {
   const study = await db
@@ -54,6 +89,7 @@ export async function getStudyHead(db: Db, actor: Actor, code: string) {
         'amendments',
       ),
     )
+    .select([movesOf, downtimesOf])
     .select((eb) => [
       sql<string>`(app_now() at time zone coalesce((select time_zone from lab), 'UTC'))::date`.as('today'),
       eb
@@ -79,6 +115,9 @@ export async function listStudyStations(db: Db, studyId: string) {
   const rows = await db
     .selectFrom('studyStation')
     .innerJoin('station', 'station.id', 'studyStation.stationId')
+    .innerJoin('studyStationStay as stay', 'stay.studyStationId', 'studyStation.id')
+    .innerJoin('station as place', 'place.id', 'stay.stationId')
+    .where('stay.untilAt', 'is', null)
     .select([
       'studyStation.id',
       'studyStation.position',
@@ -87,8 +126,8 @@ export async function listStudyStations(db: Db, studyId: string) {
       'studyStation.temperatureC',
       'studyStation.variant',
       'studyStation.endedOn',
-      'station.id as stationId',
-      'station.name',
+      'place.id as stationId',
+      'place.name',
       'station.kind',
       'station.cycleLowC',
       'station.cycleHighC',

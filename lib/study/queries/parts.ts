@@ -125,12 +125,12 @@ export async function listCurrentReadings(db: Db, studyId: string) {
 }
 export type CurrentReading = Awaited<ReturnType<typeof listCurrentReadings>>[number]
 
-/** Mean temperature of each of the study's stations while it has run. */
+/** Mean temperature that each of the study's stations has had while it has run, wherever its jars stood. */
 export async function listStationMeans(db: Db, studyId: string) {
   const rows = await db
     .selectFrom('studyStation')
-    .innerJoin('study', 'study.id', 'studyStation.studyId')
-    .innerJoin('stationTemperature', 'stationTemperature.stationId', 'studyStation.stationId')
+    .innerJoin('studyStationStay as stay', 'stay.studyStationId', 'studyStation.id')
+    .innerJoin('stationTemperature', 'stationTemperature.stationId', 'stay.stationId')
     .select('studyStation.id')
     .select([
       sql<number[]>`jsonb_agg(extract(epoch from station_temperature.measured_at) order by measured_at)`.as(
@@ -139,7 +139,8 @@ export async function listStationMeans(db: Db, studyId: string) {
       sql<number[]>`jsonb_agg(station_temperature.temperature_c order by measured_at)`.as('temperaturesC'),
     ])
     .where('studyStation.studyId', '=', studyId)
-    .whereRef('stationTemperature.measuredAt', '>=', 'study.startedAt')
+    .whereRef('stationTemperature.measuredAt', '>=', 'stay.fromAt')
+    .where(sql<boolean>`station_temperature.measured_at < coalesce(stay.until_at, 'infinity')`)
     .groupBy('studyStation.id')
     .execute()
   return rows.map(({ id, seconds, temperaturesC }) => ({

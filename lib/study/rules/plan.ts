@@ -21,15 +21,24 @@ export function adjustedPlan(plan: ProtocolPlan, adjustments: StudyAdjustments):
     ...plan,
     fillG: adjustments.fillG ?? plan.fillG,
     retains: adjustments.leaveOutRetains ? 0 : plan.retains,
-    // Cycles are counted, so none of them can be left out.
-    stations: plan.stations.map((station) =>
-      station.kind === 'temperature'
-        ? { ...station, timePoints: station.timePoints.filter((week) => !without.has(week)) }
-        : station,
-    ),
+    stations: startedPositions(plan, adjustments).map((position) => {
+      const station = plan.stations[position]!
+      const spares = adjustments.spares?.find((one) => one.position === position)?.spares ?? station.spares
+      // Cycles are counted, so none of them can be left out.
+      const timePoints =
+        station.kind === 'temperature'
+          ? station.timePoints.filter((week) => !without.has(week))
+          : station.timePoints
+      return { ...station, spares, timePoints }
+    }),
   }
   // With other middle time points, others of them are left out.
   return plan.matrixing && without.size > 0 ? matrixed(adjusted, plan.matrixing.attributes) : adjusted
+}
+
+/** Positions in the protocol's plan of the stations that start; the study's own plan holds these alone, in this order. */
+export function startedPositions(plan: ProtocolPlan, { leaveOutStations = [] }: StudyAdjustments): number[] {
+  return plan.stations.map((_, position) => position).filter((one) => !leaveOutStations.includes(one))
 }
 
 /** What would make a study fit a batch: less in each jar, fewer early weeks, no retains. */

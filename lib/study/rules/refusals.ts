@@ -1,11 +1,14 @@
 import { grouped } from '@/lib/number/rules'
 import { refuse } from '@/lib/http/errors'
 import { isSamePlace, missingInPlan } from '@/lib/protocol/rules/faults'
-import { jarsAtStation, jarsOfPlan, setAsideJars, stationName } from '@/lib/protocol/rules/plan'
+import { jarsOfPlan, setAsideJars, stationName } from '@/lib/protocol/rules/plan'
 import type { PlannedStation, ProtocolPlan } from '@/lib/protocol/schema'
 import { jarsFromGrams } from '@/lib/science/jar-grams'
-import { waysToFit } from './plan'
-import { freeIn, type StationOffer } from './stations'
+import { freedSentence, type Leaving } from '@/lib/station/rules/occupancy'
+import type { StudyAdjustments } from '@/lib/study/schema'
+import { startedPositions, waysToFit } from './plan'
+import { placesNeeded, waysToStand } from './room'
+import { asksForLamps, freeIn, hasLamps, type StationOffer } from './stations'
 import { capital, counted } from './words'
 
 export type BatchOffer = { id: string; code: string; state: string; yieldG: number | null; takenG: number }
@@ -45,28 +48,40 @@ export function refuseShortBatch(plan: ProtocolPlan, batch: BatchOffer): void {
   )
 }
 
+/** What a station's room is judged by besides the plan: who else stands there, and what was adjusted already. */
+export type Room = {
+  protocolPlan: ProtocolPlan
+  adjustments: StudyAdjustments
+  stations: StationOffer[]
+  leavings: Leaving[]
+  today: string
+}
+
 /** Every planned station needs one of the lab's, of its own, with room for all jars of all batches. */
 export function refuseStations<T extends StationOffer>(
   plan: ProtocolPlan,
   chosen: (T | null)[],
   batchCount: number,
+  room: Room,
 ): T[] {
   plan.stations.forEach((planned, position) => {
     const station = chosen[position]
-    if (station) refuseChoice(plan, planned, position, chosen, batchCount)
+    if (!station) return
+    refuseChoice(plan, planned, position, chosen)
+    refuseFull(plan, position, chosen, batchCount, room)
   })
   return plan.stations.map((planned, position) => {
     const station = chosen[position]
     if (station) return station
     const name = stationName(planned, position)
     if (planned.light) {
-      throw refuse.conflict(`No light station is chosen for ${name}. Choose the one whose lamps it means.`, {
-        kind: 'station',
-        position,
-      })
+      throw refuse.conflict(
+        `No station of the lab at ${planned.temperatureC} °C has lamps, so none can be ${name}. Ask a manager to add one or to say which has them.`,
+        { kind: 'station', position },
+      )
     }
     throw refuse.conflict(
-      `No station of the lab can be ${name}. Ask a manager to add one, or take it out of the protocol.`,
+      `No station of the lab can be ${name}. Ask a manager to add one, or start without it.`,
       { kind: 'station', position },
     )
   })
@@ -77,7 +92,6 @@ function refuseChoice(
   planned: PlannedStation,
   position: number,
   chosen: (StationOffer | null)[],
-  batchCount: number,
 ): void {
   const station = chosen[position]!
   const name = stationName(planned, position)
@@ -94,8 +108,15 @@ function refuseChoice(
       detail,
     )
   }
+  if (hasLamps(station) !== asksForLamps(planned)) {
+    throw refuse.conflict(
+      planned.light
+        ? `${station.name} has no lamps on record, and ${name} needs them. Choose a station with lamps.`
+        : `${station.name} has lamps, and ${name} stands in the dark. Choose a station without them.`,
+      detail,
+    )
+  }
   refuseCycle(planned, station, detail)
-  const sharing = plan.stations.filter((_, other) => chosen[other]?.id === station.id)
   const isTwice = plan.stations.some(
     (other, at) => at !== position && chosen[at]?.id === station.id && isSamePlace(other, planned),
   )
@@ -105,14 +126,50 @@ function refuseChoice(
       detail,
     )
   }
-  // Upright and lying jars share their station's places.
-  const needed = sharing.reduce((sum, one) => sum + jarsAtStation(plan, one), 0) * batchCount
-  if (freeIn(station) < needed) {
-    throw refuse.conflict(
-      `${station.name} has ${counted(freeIn(station), 'free place')}, ${needed} are needed. Choose another station, or make room there.`,
-      { ...detail, free: freeIn(station), needed },
-    )
-  }
+}
+
+/** Jars stand from the start, so what leaves later makes no room now; the refusal says what would. */
+function refuseFull(
+  plan: ProtocolPlan,
+  position: number,
+  chosen: (StationOffer | null)[],
+  batchCount: number,
+  { protocolPlan, adjustments, stations, leavings, today }: Room,
+): void {
+  const station = chosen[position]!
+  const free = freeIn(station)
+  const needed = placesNeeded(plan, chosen, station.id, batchCount)
+  if (free >= needed) return
+  const protocolPosition = startedPositions(protocolPlan, adjustments)[position]!
+  const options = waysToStand(
+    plan,
+    adjustments,
+    { position, protocolPosition },
+    chosen,
+    stations,
+    batchCount,
+    leavings,
+    today,
+  )
+  const own = leavings.filter((one) => one.stationId === station.id)
+  const freed = freedSentence(needed - free, today, own)
+  const ways = options.filter(({ kind }) => kind !== 'day').map(({ label }) => lowered(label))
+  throw refuse.conflict(
+    [
+      `${station.name} has ${counted(free, 'free place')}, ${needed} are needed.`,
+      freed,
+      ways.length > 0
+        ? `What would fit: ${ways.join('; ')}.`
+        : 'Ask a manager for another station, or make room there.',
+    ]
+      .filter(Boolean)
+      .join(' '),
+    { kind: 'station', position: protocolPosition, free, needed, options },
+  )
+}
+
+function lowered(text: string): string {
+  return text.charAt(0).toLowerCase() + text.slice(1)
 }
 
 function refuseCycle({ cycle }: PlannedStation, station: StationOffer, detail: object): void {

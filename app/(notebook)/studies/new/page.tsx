@@ -4,7 +4,7 @@ import { listClients } from '@/lib/client/queries'
 import { page } from '@/lib/http/page'
 import { listInstruments } from '@/lib/instrument/queries'
 import { listProtocols } from '@/lib/protocol/queries'
-import { listStations } from '@/lib/station/queries'
+import { listStations } from '@/lib/station/queries/stations'
 import { listReleasedBatches } from '@/lib/study/queries/batches'
 
 export const permission = 'study.write'

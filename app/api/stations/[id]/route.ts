@@ -1,6 +1,6 @@
 import { read, write } from '@/lib/http/route'
-import { changeStation } from '@/lib/station/commands'
-import { getStation } from '@/lib/station/queries'
+import { changeStation } from '@/lib/station/commands/keep-station'
+import { getStation } from '@/lib/station/queries/stations'
 import { changedStation, stationAddress } from '@/lib/station/schema'
 
 export const GET = read({

@@ -1,6 +1,6 @@
 import { read, write } from '@/lib/http/route'
-import { logTemperatures } from '@/lib/station/commands'
-import { stationRecord } from '@/lib/station/queries'
+import { logTemperatures } from '@/lib/station/commands/log-temperatures'
+import { stationRecord } from '@/lib/station/queries/record'
 import { loggedTemperatures, stationAddress, stationRecordPeriod } from '@/lib/station/schema'
 
 const beginning = '1970-01-01T00:00:00Z'

@@ -42,19 +42,3 @@ export function recordOf(station: StationLimits, log: StationTemperature[]): Sta
     })),
   }
 }
-
-/** Free places of a station, shelf by shelf from the top, those in `taken` left out. */
-export function freePlaces(
-  station: { shelves: number; placesPerShelf: number },
-  taken: { shelf: number | null; place: number | null }[],
-  count: number,
-): { shelf: number; place: number }[] {
-  const used = new Set(taken.map(({ shelf, place }) => `${shelf}/${place}`))
-  const free: { shelf: number; place: number }[] = []
-  for (let shelf = 1; shelf <= station.shelves; shelf++) {
-    for (let place = 1; place <= station.placesPerShelf && free.length < count; place++) {
-      if (!used.has(`${shelf}/${place}`)) free.push({ shelf, place })
-    }
-  }
-  return free
-}

@@ -1,8 +1,7 @@
-import { sql } from 'kysely'
 import type { Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
-import { recordOf, type StationRecord } from '@/lib/station/rules'
+import { isStanding } from './places'
 
 const columns = [
   'station.id',
@@ -12,6 +11,9 @@ const columns = [
   'station.lowC',
   'station.highC',
   'station.humidityPercent',
+  'station.lightLux',
+  'station.lightUvWm2',
+  'station.lightHours',
   'station.cycleLowC',
   'station.cycleHighC',
   'station.walkOrder',
@@ -42,10 +44,9 @@ export async function listStations(db: Db, _actor: Actor) {
     .select((eb) =>
       eb
         .selectFrom('jar')
-        .innerJoin('studyStation', 'studyStation.id', 'jar.studyStationId')
-        .whereRef('studyStation.stationId', '=', 'station.id')
-        .where('jar.state', 'in', ['stored', 'pulled', 'resting'])
-        .where('jar.shelf', 'is not', null)
+        .innerJoin('study', 'study.id', 'jar.studyId')
+        .whereRef('jar.stationId', '=', 'station.id')
+        .where(isStanding)
         .select((count) => count.fn.countAll<number>().as('taken'))
         .as('takenPlaces'),
     )
@@ -69,46 +70,3 @@ export async function getStation(db: Db, _actor: Actor, id: string) {
   return { ...station, studies }
 }
 export type StationPage = Awaited<ReturnType<typeof getStation>>
-
-/** The temperature log of a period with its mean kinetic temperature and excursions. */
-export async function stationRecord(
-  db: Db,
-  stationId: string,
-  from: string,
-  to: string,
-): Promise<StationRecord & { log: StationLogRow[] }> {
-  const station = await db
-    .selectFrom('station')
-    .select(['kind', 'temperatureC', 'lowC', 'highC'])
-    .where('id', '=', stationId)
-    .executeTakeFirst()
-  if (!station) throw refuse.notFound()
-  const log = await readLog(db, stationId, from, to)
-  return { ...recordOf(station, log), log }
-}
-
-async function readLog(db: Db, stationId: string, from: string, to: string) {
-  return db
-    .selectFrom('stationTemperature')
-    .innerJoin('person', 'person.id', 'stationTemperature.recordedBy')
-    .select(['stationTemperature.id', 'stationTemperature.measuredAt', 'stationTemperature.temperatureC'])
-    .select(['stationTemperature.source', 'person.initials'])
-    .where('stationTemperature.stationId', '=', stationId)
-    .where('stationTemperature.measuredAt', '>=', from)
-    .where('stationTemperature.measuredAt', '<=', to)
-    .orderBy('stationTemperature.measuredAt')
-    .execute()
-}
-export type StationLogRow = Awaited<ReturnType<typeof readLog>>[number]
-
-/** Free and taken places for an allocation; the caller holds the lock that keeps two starts apart. */
-export async function listTakenPlaces(db: Db, stationIds: string[]) {
-  return db
-    .selectFrom('jar')
-    .innerJoin('studyStation', 'studyStation.id', 'jar.studyStationId')
-    .select(['studyStation.stationId', 'jar.shelf', 'jar.place'])
-    .where('studyStation.stationId', '=', sql<string>`any(${stationIds}::uuid[])`)
-    .where('jar.state', 'in', ['stored', 'pulled', 'resting'])
-    .where('jar.shelf', 'is not', null)
-    .execute()
-}

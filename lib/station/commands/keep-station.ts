@@ -2,7 +2,9 @@ import type { z } from 'zod'
 import type { Actor } from '@/lib/auth/actor'
 import type { Trx } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
-import type { changedStation, loggedTemperatures, newStation } from '@/lib/station/schema'
+import { listTakenPlaces } from '@/lib/station/queries/places'
+import type { changedStation, newStation } from '@/lib/station/schema'
+import { capital, counted } from '@/lib/study/rules/words'
 import { expectOne } from '@/lib/trail/queries'
 
 export async function createStation(trx: Trx, _actor: Actor, input: z.output<typeof newStation>) {
@@ -43,6 +45,7 @@ export async function changeStation(
       )
     }
   }
+  await refuseNoRoom(trx, station, fields)
   await trx
     .updateTable('station')
     .set({ ...fields, version: version + 1 })
@@ -51,32 +54,27 @@ export async function changeStation(
   return { version: version + 1 }
 }
 
-export async function logTemperatures(
+/** Jars stand where the map says: a place that is taken stays, and so does the station. */
+async function refuseNoRoom(
   trx: Trx,
-  actor: Actor,
-  stationId: string,
-  input: z.output<typeof loggedTemperatures>,
-  now: string,
+  station: { id: string; name: string },
+  next: { shelves: number; placesPerShelf: number; isActive: boolean },
 ) {
-  const station = await trx
-    .selectFrom('station')
-    .select(['id', 'name'])
-    .where('id', '=', stationId)
-    .executeTakeFirst()
-  if (!station) throw refuse.notFound()
-  const late = input.readings.findIndex(({ measuredAt }) => Date.parse(measuredAt) > Date.parse(now))
-  if (late !== -1) {
-    throw refuse.invalid('A temperature cannot be read in the future. Correct its time.', {
-      [`readings.${late}.measuredAt`]: 'This time is still to come.',
-    })
+  const taken = await listTakenPlaces(trx, [station.id])
+  if (!next.isActive && taken.length > 0) {
+    throw refuse.invalid(
+      `${capital(counted(taken.length, 'jar'))} ${taken.length === 1 ? 'stands' : 'stand'} at ${station.name}. Move ${taken.length === 1 ? 'it' : 'them'} to another station first; then it goes out of use.`,
+      { isActive: 'Jars stand here.' },
+    )
   }
-  const rows = await trx
-    .insertInto('stationTemperature')
-    .values(input.readings.map((reading) => ({ ...reading, stationId, recordedBy: actor.personId })))
-    .onConflict((conflict) => conflict.column('id').doNothing())
-    .returning('id')
-    .execute()
-  return { logged: rows.length }
+  const beyond = taken.find(
+    ({ shelf, place }) => (shelf ?? 0) > next.shelves || (place ?? 0) > next.placesPerShelf,
+  )
+  if (!beyond) return
+  throw refuse.invalid(
+    `A jar stands on shelf ${beyond.shelf}, place ${beyond.place} of ${station.name}. Move the jars there first, or keep that place.`,
+    { [(beyond.shelf ?? 0) > next.shelves ? 'shelves' : 'placesPerShelf']: 'Jars stand beyond this.' },
+  )
 }
 
 async function refuseTakenName(trx: Trx, { id, name }: { id: string; name: string }) {
