@@ -1,0 +1,43 @@
+import { defineConfig, devices } from '@playwright/test'
+import { demoLab, emptyLab, type Lab } from './tests/support/e2e-labs'
+
+// Against `next build` and `next start`, never `next dev`. `npm test` builds first and starts the PostgreSQL server
+// that TEST_DATABASE_ADMIN_URL names. The browser is Debian's; nothing is downloaded.
+
+const serve = (lab: Lab) => ({
+  name: lab.name,
+  command: `node --import tsx tests/support/e2e-server.ts ${lab.name}`,
+  url: `${lab.url}/sign-in`,
+  reuseExistingServer: false,
+  stdout: 'pipe' as const,
+  timeout: 300_000,
+  // It stops the processes it started, which a plain kill would leave.
+  gracefulShutdown: { signal: 'SIGTERM' as const, timeout: 20_000 },
+})
+
+export default defineConfig({
+  testDir: 'tests/e2e',
+  timeout: 120_000,
+  expect: { timeout: 15_000 },
+  // One filled demo is shared by all of them.
+  workers: 1,
+  forbidOnly: true,
+  reporter: [['list'], ['json', { outputFile: 'test-results/playwright.json' }]],
+  outputDir: 'test-results/playwright',
+  use: {
+    ...devices['Desktop Chrome'],
+    baseURL: demoLab.url,
+    viewport: { width: 1440, height: 900 },
+    // A trace of every page takes longer than the page; what failed is seen on its picture.
+    trace: 'off',
+    screenshot: 'only-on-failure',
+    launchOptions: {
+      executablePath: '/usr/bin/chromium',
+      args: [
+        ...['--no-sandbox', '--disable-gpu', '--disable-background-networking', '--disable-component-update'],
+        ...['--disable-sync', '--no-first-run'],
+      ],
+    },
+  },
+  webServer: [serve(emptyLab)],
+})
