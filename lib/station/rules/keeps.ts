@@ -1,5 +1,5 @@
 import { degrees } from '@/lib/study/rules/finding'
-import { grouped } from '@/lib/study/rules/words'
+import { grouped } from '@/lib/number/rules'
 
 /** What a place does to the jars that stand in it. */
 export type Keeps = {
@@ -46,7 +46,7 @@ export function lightText(station: {
 }): string | null {
   if (!isLit(station)) return null
   return [
-    station.lightLux === null ? null : `${grouped(String(station.lightLux))} lux`,
+    station.lightLux === null ? null : `${grouped(station.lightLux, 0)} lux`,
     station.lightUvWm2 === null ? null : `${station.lightUvWm2} W/m² of UV`,
     `${station.lightHours} h a day`,
   ]
