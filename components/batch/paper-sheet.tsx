@@ -92,6 +92,7 @@ function Steps({ batch }: { batch: BatchPage }) {
             {step.phase ? <b>{step.phase}. </b> : null}
             {step.instruction}
             <span className="block text-soft">{conditionsText(step)}</span>
+            {step.lookFor ? <span className="block">Look for: {step.lookFor}</span> : null}
             {stepCautions(step).map((caution) => (
               <span key={caution} className="block font-650">
                 {caution}

@@ -38,6 +38,7 @@ export function StepPart({ work }: { work: BatchWork }) {
                     {step.instruction}
                   </p>
                   <p className="text-15 text-soft">{conditionsText(step) || 'No conditions prescribed'}</p>
+                  {step.lookFor ? <p className="text-17">Look for: {step.lookFor}</p> : null}
                   {stepCautions(step).map((caution) => (
                     <p key={caution} className="text-17 font-650">
                       {caution}

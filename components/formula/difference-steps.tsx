@@ -58,6 +58,7 @@ function Side({ step, fields, isAll, tone }: SideProps) {
       {conditions ? (
         <p className={`text-14 ${toneOf('speedRpm', 'minutes', 'temperatureC')}`}>{conditions}</p>
       ) : null}
+      {step.lookFor ? <p className={`text-14 ${toneOf('lookFor')}`}>Look for: {step.lookFor}</p> : null}
       {step.caution ? <p className={`text-14 ${toneOf('caution')}`}>{step.caution}</p> : null}
     </>
   )

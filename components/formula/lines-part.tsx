@@ -14,6 +14,7 @@ import { Checks } from './checks'
 import { InsideDrawing } from './inside-drawing'
 import { FamilyPart } from './family-part'
 import { LineSheet, type ChangeLines } from './line-sheet'
+import { MeasuredHow } from './measured-how'
 import { ReadSheet } from './read-sheet'
 import { ApartJar } from './apart-jar'
 import { phaseFacts } from './formula-facts'
@@ -88,6 +89,7 @@ export function LinesPart({ formula, handle, isOpen, totals, phases, checks, bef
               foot={foot}
             />
           )}
+          <MeasuredHow type={draft.emulsionType} />
           {formula.families.map((family) => (
             <FamilyPart key={family.members[0]?.code} family={family} code={formula.code} />
           ))}

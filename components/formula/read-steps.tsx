@@ -14,6 +14,7 @@ export function ReadSteps({ steps }: { steps: FormulaStep[] }) {
               {step.instruction}
             </p>
             <p className="text-14 text-soft">{conditionsText(step)}</p>
+            {step.lookFor ? <p className="text-14">Look for: {step.lookFor}</p> : null}
             {step.caution ? <p className="text-14 font-600">{step.caution}</p> : null}
           </div>
         </li>

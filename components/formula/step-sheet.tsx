@@ -28,7 +28,8 @@ const columns = [
   { key: 'speed', title: 'rpm', width: 70, align: 'text-right' },
   { key: 'minutes', title: 'min', width: 64, align: 'text-right' },
   { key: 'temperature', title: '°C', width: 64, align: 'text-right' },
-  { key: 'caution', title: 'caution', width: 220, align: '' },
+  { key: 'lookFor', title: 'what to look for', width: 190, align: '' },
+  { key: 'caution', title: 'caution', width: 170, align: '' },
 ] as const
 
 /** The process in order. "B into A" as the phase names the step that joins them. */
@@ -49,6 +50,7 @@ export function StepSheet({ steps, problems, onSteps, undo }: Props) {
       speed: '',
       minutes: '',
       temperature: '',
+      lookFor: '',
       caution: '',
     }
     onSteps((now) => {
@@ -85,7 +87,7 @@ export function StepSheet({ steps, problems, onSteps, undo }: Props) {
         <table
           ref={sheet}
           onKeyDown={press}
-          className="w-full min-w-[720px] table-fixed border-collapse text-15"
+          className="w-full min-w-[860px] table-fixed border-collapse text-15"
         >
           <caption className="sr-only">Process steps</caption>
           <thead>

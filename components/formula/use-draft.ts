@@ -111,9 +111,13 @@ function normal(part: string | TypedLine | TypedStep): unknown {
 function readKept(place: string): Draft | null {
   try {
     const kept = JSON.parse(localStorage.getItem(place) ?? 'null') as Draft | null
-    // One that was kept before there was a target pH has none.
+    // One that was kept before there was a target pH, or what to look for in a step, has none.
     return kept && Array.isArray(kept.lines) && Array.isArray(kept.steps)
-      ? { ...kept, targetPh: kept.targetPh ?? '' }
+      ? {
+          ...kept,
+          targetPh: kept.targetPh ?? '',
+          steps: kept.steps.map((step) => ({ ...step, lookFor: step.lookFor ?? '' })),
+        }
       : null
   } catch {
     return null

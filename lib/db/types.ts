@@ -274,6 +274,10 @@ export interface FormulaStep {
   formulaVersionId: string
   id: string
   instruction: string
+  /**
+   * What tells by eye or hand that the step went well.
+   */
+  lookFor: Generated<string>
   minutes: Numeric | null
   phase: Generated<string>
   position: number

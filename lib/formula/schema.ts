@@ -68,6 +68,7 @@ export const formulaStep = z.object({
     .max(200, 'A step is not hotter than 200 °C.')
     .nullable()
     .default(null),
+  lookFor: text(500).default(''),
   caution: text(500).default(''),
 })
 export type FormulaStep = z.infer<typeof formulaStep>

@@ -58,7 +58,8 @@ const countFormulas = async () => (await t.owner.selectFrom('formula').select('i
 describe('a family of variants', () => {
   it('is made of one base: each a formula with a draft that says where it came from, balanced to 100', async () => {
     const lines = baseLines()
-    const base = await newFormula('V1', lines, [step('B into A', { phase: 'B into A', minutes: 40 })])
+    const joining = { phase: 'B into A', minutes: 40, lookFor: 'Streaks that close.', caution: 'No sleeves.' }
+    const base = await newFormula('V1', lines, [step('B into A', joining)])
     const [gum, salt] = [lines[1]!.id, lines[2]!.id]
     const members = ['a', 'b', 'c', 'd', 'e', 'f'].map((tail, index) =>
       member(`V1${tail}`, 200 + 100 * (index % 3), index < 3 ? 500 : 900),
@@ -80,7 +81,7 @@ describe('a family of variants', () => {
     expect(shares).toEqual({
       ...{ Squalane: 14_000, 'Xanthan Gum': 400, 'Magnesium Sulfate': 900, Aqua: 84_700 },
     })
-    expect(last.steps).toMatchObject([{ instruction: 'B into A', minutes: 40 }])
+    expect(last.steps).toMatchObject([{ instruction: 'B into A', ...joining }])
     expect(last.families).toHaveLength(1)
     expect(last.families[0].base).toEqual({ code: 'V1', number: 1 })
     expect(last.families[0].members).toHaveLength(6)

@@ -7,7 +7,7 @@ const line = (inciName: string, percent: number, more: object = {}) => ({
   ...more,
 })
 const step = (instruction: string, more: object = {}) => ({
-  ...{ phase: '', instruction, speedRpm: null, minutes: null, temperatureC: null, caution: '' },
+  ...{ phase: '', instruction, speedRpm: null, minutes: null, temperatureC: null, lookFor: '', caution: '' },
   ...more,
 })
 const side = (lines: ReturnType<typeof line>[], steps: ReturnType<typeof step>[] = []) => ({

@@ -128,6 +128,7 @@ function listSteps(db: Db, batchId: string) {
       'formulaStep.speedRpm',
       'formulaStep.minutes',
       'formulaStep.temperatureC',
+      'formulaStep.lookFor',
       'formulaStep.caution',
     ])
     .where('batchStep.batchId', '=', batchId)

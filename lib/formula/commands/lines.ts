@@ -77,6 +77,7 @@ export async function replaceSteps(trx: Trx, versionId: string, steps: readonly 
           speedRpm: eb.ref('excluded.speedRpm'),
           minutes: eb.ref('excluded.minutes'),
           temperatureC: eb.ref('excluded.temperatureC'),
+          lookFor: eb.ref('excluded.lookFor'),
           caution: eb.ref('excluded.caution'),
         }))
         .where(sql<boolean>`(formula_step.*) is distinct from (excluded.*)`),

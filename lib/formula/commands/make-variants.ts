@@ -32,7 +32,7 @@ export async function makeVariants(trx: Trx, actor: Actor, code: string, input: 
     .execute()
   const steps = await trx
     .selectFrom('formulaStep')
-    .select(['position', 'phase', 'instruction', 'speedRpm', 'minutes', 'temperatureC', 'caution'])
+    .select(['position', 'phase', 'instruction', 'speedRpm', 'minutes', 'temperatureC', 'lookFor', 'caution'])
     .where('formulaVersionId', '=', input.fromVersionId)
     .execute()
   const varied = input.lineIds.map((id, index) => {

@@ -60,7 +60,7 @@ async function copyLines(trx: Trx, from: string, to: string) {
 async function copySteps(trx: Trx, from: string, to: string) {
   const steps = await trx
     .selectFrom('formulaStep')
-    .select(['position', 'phase', 'instruction', 'speedRpm', 'minutes', 'temperatureC', 'caution'])
+    .select(['position', 'phase', 'instruction', 'speedRpm', 'minutes', 'temperatureC', 'lookFor', 'caution'])
     .where('formulaVersionId', '=', from)
     .execute()
   if (!steps.length) return

@@ -40,7 +40,16 @@ export async function getDifference(db: Db, _actor: Actor, code: string, query: 
     .execute()
   const steps = await db
     .selectFrom('formulaStep')
-    .select(['formulaVersionId', 'phase', 'instruction', 'speedRpm', 'minutes', 'temperatureC', 'caution'])
+    .select([
+      'formulaVersionId',
+      'phase',
+      'instruction',
+      'speedRpm',
+      'minutes',
+      'temperatureC',
+      'lookFor',
+      'caution',
+    ])
     .where('formulaVersionId', 'in', ids)
     .orderBy('position')
     .execute()

@@ -110,7 +110,7 @@ function listLines(db: Db, versionIds: string[]) {
 function listSteps(db: Db, versionId: string) {
   return db
     .selectFrom('formulaStep')
-    .select(['id', 'phase', 'instruction', 'speedRpm', 'minutes', 'temperatureC', 'caution'])
+    .select(['id', 'phase', 'instruction', 'speedRpm', 'minutes', 'temperatureC', 'lookFor', 'caution'])
     .where('formulaVersionId', '=', versionId)
     .orderBy('position')
     .execute()

@@ -83,7 +83,7 @@ const lineFields: LineField[] = [
   ...(['isRemainder', 'priceCentsPerKg'] as const),
 ]
 const stepFields: StepField[] = [
-  ...(['phase', 'instruction', 'speedRpm', 'minutes', 'temperatureC', 'caution'] as const),
+  ...(['phase', 'instruction', 'speedRpm', 'minutes', 'temperatureC', 'lookFor', 'caution'] as const),
 ]
 
 /**

@@ -25,12 +25,14 @@ export type TypedStep = {
   speed: string
   minutes: string
   temperature: string
+  /** What tells by eye or hand that the step went well. */
+  lookFor: string
   caution: string
 }
 
 export type LineErrors = Partial<Record<'inciName' | 'function' | 'percent' | 'density' | 'price', string>>
 export type StepErrors = Partial<
-  Record<'phase' | 'instruction' | 'speed' | 'minutes' | 'temperature' | 'caution', string>
+  Record<'phase' | 'instruction' | 'speed' | 'minutes' | 'temperature' | 'lookFor' | 'caution', string>
 >
 
 export function typeLine(line: FormulaLine): TypedLine {
@@ -47,9 +49,9 @@ export function typeLine(line: FormulaLine): TypedLine {
 
 export function typeStep(step: FormulaStep): TypedStep {
   const text = (value: number | null) => (value === null ? '' : String(value))
-  const { id, phase, instruction, caution } = step
+  const { id, phase, instruction, lookFor, caution } = step
   return {
-    ...{ id, phase, instruction, caution },
+    ...{ id, phase, instruction, lookFor, caution },
     ...{ speed: text(step.speedRpm), minutes: text(step.minutes), temperature: text(step.temperatureC) },
   }
 }
@@ -59,9 +61,8 @@ export function isBlankLine(line: TypedLine): boolean {
 }
 
 export function isBlankStep(step: TypedStep): boolean {
-  return [step.phase, step.instruction, step.speed, step.minutes, step.temperature, step.caution].every(
-    (text) => !text.trim(),
-  )
+  const { phase, instruction, speed, minutes, temperature, lookFor, caution } = step
+  return [phase, instruction, speed, minutes, temperature, lookFor, caution].every((text) => !text.trim())
 }
 
 /** The share of the "q.s. to 100" line: what the readable others leave. */
