@@ -1,110 +1,72 @@
+'use client'
+
 import Link from 'next/link'
+import { ListLedger } from '@/components/list/list-ledger'
+import { ListTools } from '@/components/list/list-tools'
 import { Empty } from '@/components/ui/empty'
-import { Ledger, type LedgerColumn } from '@/components/ui/ledger'
 import { LinkButton } from '@/components/ui/link-button'
-import type { BatchRow } from '@/lib/batch/queries/list-batches'
-import type { BatchListQuery } from '@/lib/batch/schema'
+import type { BatchesPage, BatchRow } from '@/lib/batch/queries/list-batches'
+import { batchList } from '@/lib/batch/rules/list'
 import { grouped } from '@/lib/number/rules'
+import { isNarrowed } from '@/lib/list/rules'
+import type { ListQuery } from '@/lib/list/schema'
 
-type Props = { batches: BatchRow[]; query: BatchListQuery; day: (instant: string) => string }
+type Props = { page: BatchesPage; query: ListQuery; timeZone: string }
 
-export function BatchList({ batches, query, day }: Props) {
+export function BatchList({ page, query, timeZone }: Props) {
   return (
-    <Ledger
-      caption="Batches"
-      rows={batches}
-      rowKey={(row) => row.id}
-      isQuiet={(row) => row.state === 'rejected'}
-      empty={<NoBatch query={query} />}
-      columns={columnsOf(day).map(({ isSorted, ...column }) => ({
-        ...column,
-        sort: isSorted ? sortOf(column.key, query) : undefined,
-      }))}
-    />
+    <>
+      <ListTools
+        list={batchList}
+        path="/batches"
+        query={query}
+        choices={page.choices}
+        without={['state']}
+        searchLabel="Find a batch"
+        placeholder="Code or formula"
+        total={page.total}
+      />
+      <div className="mt-3">
+        <ListLedger
+          list={batchList}
+          path="/batches"
+          query={query}
+          page={page}
+          caption="Batches"
+          timeZone={timeZone}
+          rowKey={(row) => row.id}
+          isQuiet={(row) => row.state === 'rejected'}
+          cells={cells}
+          empty={<NoBatch query={query} />}
+        />
+      </div>
+    </>
   )
 }
 
-function columnsOf(day: Props['day']): (LedgerColumn<BatchRow> & { isSorted?: boolean })[] {
-  return [
-    {
-      key: 'code',
-      title: 'batch',
-      width: '110px',
-      isSorted: true,
-      cell: (row) => (
-        <Link href={`/batches/${row.code}`} className="font-650 underline-offset-4 hover:underline">
-          {row.code}
-        </Link>
-      ),
-    },
-    {
-      key: 'formula',
-      title: 'formula',
-      isSorted: true,
-      cell: (row) => `${row.formulaName}, version ${row.versionNumber}`,
-    },
-    {
-      key: 'size',
-      title: 'size, g',
-      align: 'right',
-      from: 'tablet',
-      isSorted: true,
-      cell: (row) => grouped(row.sizeG, 0),
-    },
-    {
-      key: 'yield',
-      title: 'yield, g',
-      align: 'right',
-      from: 'tablet',
-      isSorted: true,
-      cell: (row) => (row.yieldG === null ? '' : grouped(row.yieldG, 0)),
-    },
-    {
-      key: 'made',
-      title: 'made',
-      from: 'tablet',
-      isSorted: true,
-      cell: (row) => (row.madeAt ? day(row.madeAt) : ''),
-    },
-    {
-      key: 'studies',
-      title: 'in study',
-      from: 'desk',
-      cell: (row) => row.studies.map((study) => study.code).join(', '),
-    },
-    { key: 'state', title: 'stands at', isSorted: true, cell: (row) => row.state },
-    { key: 'next', title: 'who is next', from: 'tablet', cell: whoIsNext },
-  ]
+const cells: Parameters<typeof ListLedger<BatchRow>>[0]['cells'] = {
+  code: {
+    width: '110px',
+    cell: (row) => (
+      <Link href={`/batches/${row.code}`} className="font-650 underline-offset-4 hover:underline">
+        {row.code}
+      </Link>
+    ),
+  },
+  size: { from: 'tablet', cell: (row) => grouped(row.sizeG, 0) },
+  yield: { from: 'tablet', cell: (row) => (row.yieldG === null ? '' : grouped(row.yieldG, 0)) },
+  made: { from: 'tablet' },
+  studies: { from: 'desk' },
+  next: { from: 'tablet' },
 }
 
-function whoIsNext(row: BatchRow): string {
-  if (row.state === 'making') {
-    const left = row.lines - row.linesWeighed
-    return `${row.createdBy}: ${left ? `${left} to weigh` : 'its steps, then the yield'}`
-  }
-  if (row.state === 'resting')
-    return row.emulsionTypeFound ? 'formulator decides' : 'formulator tests the type'
-  return row.state === 'released' && !row.studies.length ? 'a study can start' : 'nobody'
-}
-
-function sortOf(key: string, query: BatchListQuery) {
-  const isNow = query.sort === key
-  const order = isNow && query.order === 'asc' ? 'desc' : 'asc'
-  const kept = {
-    ...(query.q ? { q: query.q } : {}),
-    ...(query.state === 'all' ? {} : { state: query.state }),
-  }
-  return {
-    href: `/batches?${new URLSearchParams({ ...kept, sort: key, order })}`,
-    now: isNow ? (query.order === 'asc' ? ('up' as const) : ('down' as const)) : undefined,
-  }
-}
-
-function NoBatch({ query }: { query: BatchListQuery }) {
-  if (query.q || query.state !== 'all') {
+function NoBatch({ query }: { query: ListQuery }) {
+  if (isNarrowed(batchList, query)) {
     return (
       <Empty
-        title={query.q ? `No batch has ${query.q}.` : `No batch is ${query.state}.`}
+        title={
+          query.q ? `No batch has ${query.q}.` : `No batch is ${query.filters['state'] || 'of that kind'}.`
+        }
         sentence="The search looks in batch codes and formula names."
         act={<LinkButton href="/batches">Show all batches</LinkButton>}
       />

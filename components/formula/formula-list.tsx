@@ -2,59 +2,75 @@
 
 import Form from 'next/form'
 import Link from 'next/link'
+import { ListLedger } from '@/components/list/list-ledger'
+import { ListTools } from '@/components/list/list-tools'
 import { Button } from '@/components/ui/button'
 import { Empty } from '@/components/ui/empty'
-import { Ledger, type LedgerColumn } from '@/components/ui/ledger'
 import { LinkButton } from '@/components/ui/link-button'
-import type { FormulaRow } from '@/lib/formula/queries/list-formulas'
-import { percentText } from '@/lib/formula/rules/numbers'
-import type { FormulaListQuery } from '@/lib/formula/schema'
+import type { FormulaRow, FormulasPage } from '@/lib/formula/queries/list-formulas'
+import { formulaList } from '@/lib/formula/rules/list'
+import { moneyText, percentText } from '@/lib/formula/rules/numbers'
+import { isNarrowed } from '@/lib/list/rules'
+import type { ListQuery } from '@/lib/list/schema'
 
-type Props = { formulas: FormulaRow[]; query: FormulaListQuery; mayWrite: boolean }
+type Props = { page: FormulasPage; query: ListQuery; mayWrite: boolean; timeZone: string }
 
 /** The list, and ticked in it the formulas that are compared; the picks go into the address. */
-export function FormulaList({ formulas, query, mayWrite }: Props) {
+export function FormulaList({ page, query, mayWrite, timeZone }: Props) {
   return (
-    <Form action="/formulas/compare">
-      <Ledger
-        caption="Formulas"
-        rows={formulas}
-        rowKey={(row) => row.id}
-        empty={<NoFormula query={query} mayWrite={mayWrite} />}
-        columns={columns.map((column) =>
-          column.key === 'pick' ? column : { ...column, sort: sortOf(column.key, query) },
-        )}
+    <>
+      <ListTools
+        list={formulaList}
+        path="/formulas"
+        query={query}
+        choices={page.choices}
+        searchLabel="Find a formula"
+        placeholder="Code, name, type or INCI name"
+        total={page.total}
       />
-      {formulas.length > 1 ? (
-        <div className="mt-3 flex flex-wrap items-center gap-x-4 gap-y-2">
-          <Button type="submit">Compare the ticked</Button>
-          <p className="text-13 text-soft">
-            At most twelve: which prototype stands where, in its studies so far.
-          </p>
-        </div>
-      ) : null}
-    </Form>
+      <Form action="/formulas/compare" className="mt-3">
+        <ListLedger
+          list={formulaList}
+          path="/formulas"
+          query={query}
+          page={page}
+          caption="Formulas"
+          timeZone={timeZone}
+          rowKey={(row) => row.id}
+          before={[tick]}
+          cells={cells}
+          empty={<NoFormula query={query} mayWrite={mayWrite} />}
+        />
+        {page.rows.length > 1 ? (
+          <div className="mt-3 flex flex-wrap items-center gap-x-4 gap-y-2">
+            <Button type="submit">Compare the ticked</Button>
+            <p className="text-13 text-soft">
+              At most twelve: which prototype stands where, in its studies so far.
+            </p>
+          </div>
+        ) : null}
+      </Form>
+    </>
   )
 }
 
-const columns: LedgerColumn<FormulaRow>[] = [
-  {
-    key: 'pick',
-    title: <span className="sr-only">compare</span>,
-    width: '34px',
-    cell: (row) => (
-      <input
-        type="checkbox"
-        name="code"
-        value={row.code}
-        aria-label={`Compare ${row.code}`}
-        className="tick block"
-      />
-    ),
-  },
-  {
-    key: 'code',
-    title: 'code',
+const tick = {
+  key: 'pick',
+  title: <span className="sr-only">compare</span>,
+  width: '34px',
+  cell: (row: FormulaRow) => (
+    <input
+      type="checkbox"
+      name="code"
+      value={row.code}
+      aria-label={`Compare ${row.code}`}
+      className="tick block"
+    />
+  ),
+}
+
+const cells: Parameters<typeof ListLedger<FormulaRow>>[0]['cells'] = {
+  code: {
     width: '90px',
     cell: (row) => (
       <Link href={`/formulas/${row.code}`} className="font-650 underline-offset-4 hover:underline">
@@ -62,28 +78,17 @@ const columns: LedgerColumn<FormulaRow>[] = [
       </Link>
     ),
   },
-  { key: 'name', title: 'name', cell: (row) => row.name },
-  { key: 'emulsionType', title: 'emulsion type', from: 'tablet', cell: (row) => row.emulsionType },
-  {
-    key: 'internal',
-    title: 'internal, % v/v',
-    align: 'right',
-    cell: (row) => <Inside row={row} />,
-  },
-  {
-    key: 'batches',
-    title: 'batches',
+  emulsionType: { from: 'tablet' },
+  internal: { cell: (row) => <Inside row={row} /> },
+  batches: {
     align: 'right',
     from: 'tablet',
     cell: (row) => (row.batches.length ? row.batches.map((batch) => batch.code).join(', ') : 'none yet'),
   },
-  {
-    key: 'state',
-    title: 'stands at',
-    from: 'tablet',
-    cell: (row) => `version ${row.versionNumber}, ${row.state}`,
-  },
-]
+  state: { from: 'tablet' },
+  missing: { cell: (row) => (row.missingThousandths ? percentText(row.missingThousandths) : 'whole') },
+  cost: { cell: (row) => (row.costCentsPerKg === null ? '' : moneyText(row.costCentsPerKg)) },
+}
 
 /** A level of 0 to 100 %, with the packing of equal balls as its tick. */
 function Inside({ row }: { row: FormulaRow }) {
@@ -107,22 +112,12 @@ function Inside({ row }: { row: FormulaRow }) {
   )
 }
 
-function sortOf(key: string, query: FormulaListQuery) {
-  const isNow = query.sort === key
-  const order = isNow && query.order === 'asc' ? 'desc' : 'asc'
-  const search = new URLSearchParams({ ...(query.q ? { q: query.q } : {}), sort: key, order })
-  return {
-    href: `/formulas?${search}`,
-    now: isNow ? (query.order === 'asc' ? ('up' as const) : ('down' as const)) : undefined,
-  }
-}
-
-function NoFormula({ query, mayWrite }: { query: FormulaListQuery; mayWrite: boolean }) {
-  if (query.q) {
+function NoFormula({ query, mayWrite }: { query: ListQuery; mayWrite: boolean }) {
+  if (isNarrowed(formulaList, query)) {
     return (
       <Empty
-        title={`No formula has ${query.q}.`}
-        sentence="The search looks in codes, names, emulsion types and INCI names."
+        title={query.q ? `No formula has ${query.q}.` : 'No formula is of that kind.'}
+        sentence="The search looks in codes, names, emulsion types and INCI names, among what the filters leave."
         act={<LinkButton href="/formulas">Show all formulas</LinkButton>}
       />
     )

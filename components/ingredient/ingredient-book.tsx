@@ -3,26 +3,27 @@
 import Link from 'next/link'
 import { useRouter } from 'next/navigation'
 import { useState } from 'react'
+import { ListLedger } from '@/components/list/list-ledger'
+import { ListTools } from '@/components/list/list-tools'
 import { Button } from '@/components/ui/button'
 import { Empty } from '@/components/ui/empty'
 import { Heading } from '@/components/ui/heading'
-import { Ledger } from '@/components/ui/ledger'
 import { LinkButton } from '@/components/ui/link-button'
 import type { BookRow, IngredientBook as Book } from '@/lib/ingredient/queries'
-import { ingredientPageSize, type IngredientBookQuery } from '@/lib/ingredient/schema'
+import { ingredientList } from '@/lib/ingredient/rules'
+import { isNarrowed } from '@/lib/list/rules'
+import type { ListQuery } from '@/lib/list/schema'
 import { grouped } from '@/lib/number/rules'
-import { bookAddress } from './book-address'
-import { bookColumns } from './book-columns'
-import { BookFilter } from './book-filter'
+import { bookCells } from './book-cells'
 import { IngredientDialog } from './ingredient-dialog'
 
-type Props = { book: Book; query: IngredientBookQuery; mayWrite: boolean; timeZone: string }
+type Props = { book: Book; query: ListQuery; mayWrite: boolean; timeZone: string }
 
 /** What the lab weighs in: each with its names, its figures and where these are from. */
 export function IngredientBook({ book, query, mayWrite, timeZone }: Props) {
   const router = useRouter()
   const [opened, setOpened] = useState<BookRow | 'new' | null>(null)
-  const isFiltered = Boolean(query.q.trim()) || query.phase !== 'any' || query.function !== ''
+  const isFiltered = isNarrowed(ingredientList, query)
   const add = mayWrite ? (
     <Button kind="primary" onClick={() => setOpened('new')}>
       Add an ingredient
@@ -31,30 +32,40 @@ export function IngredientBook({ book, query, mayWrite, timeZone }: Props) {
   return (
     <>
       <Heading
-        crumb={query.q.trim() ? `Ingredients with ${query.q.trim()}` : 'Ingredients'}
+        crumb={query.q ? `Ingredients with ${query.q}` : 'Ingredients'}
         headline={<Headline book={book} />}
         sentence={
-          book.fromMemory > 0
+          book.counts.fromMemory > 0
             ? 'Each density decides the share by volume; one that was measured or read off a data sheet is set bold.'
             : undefined
         }
-        acts={book.count > 0 || isFiltered ? add : undefined}
+        acts={book.counts.all > 0 || isFiltered ? add : undefined}
       />
-      <div className="mt-6">
-        <BookFilter query={query} functions={book.functions} />
+      <div className="mt-5">
+        <ListTools
+          list={ingredientList}
+          path="/ingredients"
+          query={query}
+          choices={book.choices}
+          searchLabel="Find an ingredient"
+          placeholder="INCI name, synonym, supplier’s name"
+          total={book.total}
+        />
       </div>
       <div className="mt-3">
-        <Ledger
+        <ListLedger
+          list={ingredientList}
+          path="/ingredients"
+          query={query}
+          page={book}
           caption="Ingredients"
-          rows={book.rows}
+          timeZone={timeZone}
           rowKey={(row) => row.id}
-          columns={bookColumns(query, setOpened)}
+          cells={bookCells(setOpened)}
           empty={
             isFiltered ? (
               <Empty
-                title={
-                  query.q.trim() ? `No ingredient has ${query.q.trim()}.` : 'No ingredient is of that kind.'
-                }
+                title={query.q ? `No ingredient has ${query.q}.` : 'No ingredient is of that kind.'}
                 sentence="The search looks in INCI names, synonyms and suppliers’ names."
                 act={<LinkButton href="/ingredients">Show the whole book</LinkButton>}
               />
@@ -68,7 +79,6 @@ export function IngredientBook({ book, query, mayWrite, timeZone }: Props) {
           }
         />
       </div>
-      <Pages book={book} query={query} />
       {opened ? (
         <IngredientDialog
           ingredient={opened === 'new' ? null : opened}
@@ -83,8 +93,8 @@ export function IngredientBook({ book, query, mayWrite, timeZone }: Props) {
 }
 
 function Headline({ book }: { book: Book }) {
-  if (book.count === 0) return <>Nothing to weigh in here</>
-  if (book.fromMemory === 0)
+  if (book.counts.all === 0) return <>Nothing to weigh in here</>
+  if (book.counts.fromMemory === 0)
     return (
       <>
         <b>Every density</b> has its source
@@ -93,36 +103,9 @@ function Headline({ book }: { book: Book }) {
   return (
     <>
       <b>
-        {grouped(book.fromMemory, 0)} of {grouped(book.count, 0)}
+        {grouped(book.counts.fromMemory, 0)} of {grouped(book.counts.all, 0)}
       </b>{' '}
-      {book.count === 1 ? 'density is' : 'densities are'} from memory
+      {book.counts.all === 1 ? 'density is' : 'densities are'} from memory
     </>
-  )
-}
-
-function Pages({ book, query }: { book: Book; query: IngredientBookQuery }) {
-  if (book.pages < 2) return null
-  const first = (book.page - 1) * ingredientPageSize + 1
-  const link = 'inline-flex min-h-11 items-center underline underline-offset-4'
-  return (
-    <nav
-      aria-label="Pages of the book"
-      data-screen-only
-      className="mt-3 flex flex-wrap items-center gap-x-8 text-15"
-    >
-      <span className="text-soft">
-        {first} to {first + book.rows.length - 1} of {grouped(book.count, 0)}
-      </span>
-      {book.page > 1 ? (
-        <Link href={bookAddress(query, { page: book.page - 1 })} className={link}>
-          Page {book.page - 1}
-        </Link>
-      ) : null}
-      {book.page < book.pages ? (
-        <Link href={bookAddress(query, { page: book.page + 1 })} className={link}>
-          Page {book.page + 1}
-        </Link>
-      ) : null}
-    </nav>
   )
 }

@@ -204,17 +204,6 @@ export const decideInput = z.object({
 })
 export type DecideInput = z.infer<typeof decideInput>
 
-export const batchSorts = ['code', 'formula', 'size', 'yield', 'state', 'made'] as const
-export const batchListQuery = z.object({
-  q: z.string().max(200).catch(''),
-  state: z.enum(['all', ...batchStates]).catch('all'),
-  sort: z.enum(batchSorts).catch('made'),
-  order: z.enum(['asc', 'desc']).catch('desc'),
-})
-export type BatchListQuery = z.infer<typeof batchListQuery>
-
 export const batchAddress = z.object({ code: z.string().max(60) })
 
-export const batchesKey = ({ q, state, sort, order }: BatchListQuery) =>
-  `/api/batches?${new URLSearchParams({ q, state, sort, order })}`
 export const batchKey = (code: string) => `/api/batches/${encodeURIComponent(code)}`

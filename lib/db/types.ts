@@ -254,6 +254,15 @@ export interface FormulaAnswer {
   value: Numeric | null
 }
 
+export interface FormulaFigure {
+  costCentsPerKg: number | null
+  formulaId: string
+  formulaVersionId: string
+  internalVolumePercent: Numeric | null
+  isHighInternalPhase: boolean
+  missingThousandths: number
+}
+
 export interface FormulaLine {
   density: Numeric
   formulaVersionId: string
@@ -750,6 +759,7 @@ export interface DB {
   flagComment: FlagComment
   formula: Formula
   formulaAnswer: FormulaAnswer
+  formulaFigure: FormulaFigure
   formulaLine: FormulaLine
   formulaStep: FormulaStep
   formulaVersion: FormulaVersion

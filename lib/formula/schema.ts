@@ -181,14 +181,6 @@ export const makeVariantsInput = z
   })
 export type MakeVariantsInput = z.infer<typeof makeVariantsInput>
 
-export const formulaSorts = ['code', 'name', 'emulsionType', 'internal', 'batches', 'state'] as const
-export const formulaListQuery = z.object({
-  q: z.string().max(200).catch(''),
-  sort: z.enum(formulaSorts).catch('code'),
-  order: z.enum(['asc', 'desc']).catch('asc'),
-})
-export type FormulaListQuery = z.infer<typeof formulaListQuery>
-
 export const formulaAddress = z.object({ code: z.string().max(40) })
 export const formulaPageQuery = z.object({
   /** Number of the version; the latest where there is none. */
@@ -218,8 +210,6 @@ function isOnce(rows: { id: string }[]): boolean {
   return new Set(rows.map((row) => row.id)).size === rows.length
 }
 
-export const formulasKey = ({ q, sort, order }: FormulaListQuery) =>
-  `/api/formulas?${new URLSearchParams({ q, sort, order })}`
 export const formulaKey = (code: string, number?: number) =>
   `/api/formulas/${encodeURIComponent(code)}${number ? `?version=${number}` : ''}`
 export const compareAddress = (codes: readonly string[]) =>

@@ -2,8 +2,13 @@ import { sql, type Expression, type SqlBool } from 'kysely'
 import type { Actor } from '@/lib/auth/actor'
 import type { Db, Trx } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
+import { pageOf } from '@/lib/list/queries/page'
+import { naturally, type Source } from '@/lib/list/queries/source'
+import type { ListQuery } from '@/lib/list/schema'
 import { comparable, matchOf } from './rules'
-import { fromMemory, ingredientPageSize, type IngredientBookQuery } from './schema'
+import { fromMemory } from './schema'
+
+type BookQuery = ListQuery<'phase' | 'function' | 'source'>
 
 const lineColumns = [
   'ingredient.id',
@@ -86,47 +91,65 @@ export async function listFactsOfVersion(db: Db | Trx, formulaVersionId: string)
 
 export type IngredientFacts = Awaited<ReturnType<typeof listIngredientFacts>>[number]
 
-/** One page of the book, how many there are, and the functions to filter by: four statements, whatever its size. */
-export async function listIngredientBook(db: Db, _actor: Actor, query: IngredientBookQuery) {
-  const found = bookRows(db, query)
-  const [{ count, memory }, functions] = await Promise.all([
-    found
-      .select((eb) => [
-        eb.fn.countAll<number>().as('count'),
-        eb.fn.countAll<number>().filterWhere('densitySource', '=', fromMemory).as('memory'),
-      ])
-      .executeTakeFirstOrThrow(),
-    listFunctions(db),
-  ])
-  const pages = Math.max(1, Math.ceil(count / ingredientPageSize))
-  const page = Math.min(query.page, pages)
-  const direction = query.order === 'desc' ? ('desc' as const) : ('asc' as const)
-  const rows = await found
-    .select([...lineColumns, ...nameColumns, ...figureColumns])
-    .select(['ingredient.note', 'ingredient.version'])
-    .orderBy(sortColumn[query.sort], (order) =>
-      direction === 'desc' ? order.desc().nullsLast() : order.asc().nullsLast(),
-    )
-    .orderBy(sql`lower(inci_name)`)
-    .limit(ingredientPageSize)
-    .offset((page - 1) * ingredientPageSize)
-    .execute()
-  const usedIn = await countFormulas(
-    db,
-    rows.map((row) => row.id),
-  )
-  return {
-    rows: rows.map((row) => ({ ...row, usedIn: usedIn.get(row.id) ?? 0, match: matchOf(row, query.q) })),
-    count,
-    fromMemory: memory,
-    page,
-    pages,
-    functions,
-  }
+/** One page of the book, how many densities are from memory, and the functions to filter by. */
+export async function listIngredientBook(db: Db, actor: Actor, query: BookQuery) {
+  const page = await pageOf(db, ingredientSource(db, actor, query), query)
+  return { ...page, counts: await countBook(db), choices: { function: await listFunctions(db) } }
 }
 
 export type IngredientBook = Awaited<ReturnType<typeof listIngredientBook>>
-export type BookRow = IngredientBook['rows'][number]
+
+export function ingredientSource(db: Db, _actor: Actor, { q, filters }: BookQuery): Source<BookRow> {
+  const { phase, function: use, source } = filters
+  return {
+    from: sql`ingredient`,
+    where: [
+      ...(q ? [sql<SqlBool>`${namedLike(`%${likeText(q)}%`)}`] : []),
+      ...(phase ? [sql<SqlBool>`is_oil_phase = ${phase === 'oil'}`] : []),
+      ...(use ? [sql<SqlBool>`function = ${use}`] : []),
+      ...(source ? [sql<SqlBool>`(density_source = ${fromMemory}) = ${source === 'from memory'}`] : []),
+    ],
+    id: sql`ingredient.id`,
+    idKind: 'uuid',
+    sorts: {
+      inciName: naturally('ingredient.inciName'),
+      function: naturally('ingredient.function'),
+      density: { by: sql`density`, kind: 'number' },
+      price: { by: sql`price_cents_per_kg`, kind: 'number' },
+      supplierName: { by: sql`nullif(supplier_name, '') collate natural_order`, kind: 'text' },
+      densitySource: naturally('ingredient.densitySource'),
+      melts: { by: sql`melts_above_c`, kind: 'number' },
+      acid: { by: sql`acid_value`, kind: 'number' },
+      base: { by: sql`base_value`, kind: 'number' },
+    },
+    rows: (ids) => bookRows(db, q, ids),
+    idOf: (row) => row.id,
+  }
+}
+
+async function bookRows(db: Db, q: string, ids: string[]) {
+  const rows = await db
+    .selectFrom('ingredient')
+    .select([...lineColumns, ...nameColumns, ...figureColumns])
+    .select(['ingredient.note', 'ingredient.version'])
+    .where(sql<SqlBool>`ingredient.id = any(${ids}::uuid[])`)
+    .execute()
+  const usedIn = await countFormulas(db, ids)
+  return rows.map((row) => ({ ...row, usedIn: usedIn.get(row.id) ?? 0, match: matchOf(row, q) }))
+}
+
+export type BookRow = Awaited<ReturnType<typeof bookRows>>[number]
+
+/** Of the whole book, whatever is searched for. */
+async function countBook(db: Db) {
+  return db
+    .selectFrom('ingredient')
+    .select((eb) => [
+      eb.fn.countAll<number>().as('all'),
+      eb.fn.countAll<number>().filterWhere('densitySource', '=', fromMemory).as('fromMemory'),
+    ])
+    .executeTakeFirstOrThrow()
+}
 
 /** One ingredient with the formulas that use it and who changed it last. */
 export async function getIngredient(db: Db, _actor: Actor, id: string) {
@@ -162,22 +185,6 @@ export async function getIngredient(db: Db, _actor: Actor, id: string) {
 }
 
 export type IngredientPage = Awaited<ReturnType<typeof getIngredient>>
-
-const sortColumn = {
-  inciName: sql`lower(inci_name)`,
-  function: sql`lower(ingredient.function)`,
-  density: sql`ingredient.density`,
-  price: sql`ingredient.price_cents_per_kg`,
-  supplierName: sql`nullif(lower(supplier_name), '')`,
-} as const
-
-function bookRows(db: Db, query: IngredientBookQuery) {
-  return db
-    .selectFrom('ingredient')
-    .$if(query.q.trim() !== '', (rows) => rows.where(namedLike(`%${likeText(query.q)}%`)))
-    .$if(query.phase !== 'any', (rows) => rows.where('ingredient.isOilPhase', '=', query.phase === 'oil'))
-    .$if(query.function !== '', (rows) => rows.where('ingredient.function', '=', query.function))
-}
 
 /** Of the rows on the page alone: beside every row that is passed over to reach it, it would cost seconds. */
 async function countFormulas(db: Db, ids: string[]): Promise<Map<string | null, number>> {

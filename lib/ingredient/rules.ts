@@ -1,3 +1,7 @@
+import { percentText } from '@/lib/formula/rules/numbers'
+import { choice, describeList } from '@/lib/list/schema'
+import type { BookRow } from './queries'
+
 /** As a search compares names: without capitals and without the spaces around them. */
 export function comparable(typed: string): string {
   return typed.trim().toLowerCase()
@@ -26,4 +30,74 @@ export function tidySynonyms(inciName: string, synonyms: readonly string[]): str
     seen.add(key)
     return true
   })
+}
+
+export const ingredientList = describeList<BookRow>()({
+  name: 'ingredients',
+  sort: 'inciName',
+  columns: [
+    { key: 'inciName', title: 'INCI name', sort: 'text', value: (row) => row.inciName },
+    { key: 'function', title: 'function', sort: 'text', value: (row) => row.function },
+    { key: 'phase', title: 'phase', value: (row) => (row.isOilPhase ? 'oil' : 'water') },
+    { key: 'density', title: 'g/mL', kind: 'number', sort: 'number', value: (row) => row.density },
+    { key: 'range', title: 'usual % w/w', value: rangeText },
+    {
+      key: 'price',
+      title: 'per kg',
+      kind: 'number',
+      sort: 'number',
+      value: (row) => (row.priceCentsPerKg === null ? null : row.priceCentsPerKg / 100),
+    },
+    { key: 'supplierName', title: 'supplier’s name for it', sort: 'text', value: (row) => row.supplierName },
+    { key: 'usedIn', title: 'used in', kind: 'number', value: (row) => row.usedIn },
+    { key: 'synonyms', title: 'also called', isExtra: true, value: (row) => row.synonyms.join('; ') },
+    {
+      key: 'densitySource',
+      title: 'density from',
+      sort: 'text',
+      isExtra: true,
+      value: (row) => row.densitySource,
+    },
+    {
+      key: 'melts',
+      title: 'melts above, °C',
+      kind: 'number',
+      sort: 'number',
+      isExtra: true,
+      value: (row) => row.meltsAboveC,
+    },
+    {
+      key: 'acid',
+      title: 'acid value',
+      kind: 'number',
+      sort: 'number',
+      isExtra: true,
+      value: (row) => row.acidValue,
+    },
+    {
+      key: 'base',
+      title: 'base value',
+      kind: 'number',
+      sort: 'number',
+      isExtra: true,
+      value: (row) => row.baseValue,
+    },
+    { key: 'caution', title: 'caution', isExtra: true, value: (row) => row.caution },
+    { key: 'note', title: 'note', isExtra: true, value: (row) => row.note },
+  ],
+  filters: {
+    phase: choice('Phase', ['oil', 'water']),
+    function: choice('Function'),
+    source: choice('Density', ['from memory', 'with a source']),
+  },
+})
+
+/** The share it is usually used at, in % w/w. */
+export function rangeText({
+  percentLowThousandths: low,
+  percentHighThousandths: high,
+}: Pick<BookRow, 'percentLowThousandths' | 'percentHighThousandths'>): string {
+  if (low === null && high === null) return ''
+  if (low === null) return `at most ${percentText(high ?? 0)}`
+  return high === null ? `from ${percentText(low)}` : `${percentText(low)} to ${percentText(high)}`
 }

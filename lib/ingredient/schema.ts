@@ -149,29 +149,6 @@ export const ingredientIds = z.object({
     .refine((ids) => ids.length <= 200, 'At most 200 ingredients are looked up at once.'),
 })
 
-export const ingredientPhases = ['any', 'oil', 'water'] as const
-export const ingredientSorts = ['inciName', 'function', 'density', 'price', 'supplierName'] as const
-export const ingredientPageSize = 100
-
-/** PostgreSQL can keep no NUL in text, so it is none to look for either. */
-const word = (max: number) =>
-  z
-    .string()
-    .max(max)
-    .transform((typed) => typed.replaceAll('\0', ''))
-    .catch('')
-
-/** Search, filter, sort and page: all of them stand in the address. */
-export const ingredientBookQuery = z.object({
-  q: word(200),
-  phase: z.enum(ingredientPhases).catch('any'),
-  function: word(100),
-  sort: z.enum(ingredientSorts).catch('inciName'),
-  order: z.enum(['asc', 'desc']).catch('asc'),
-  page: z.coerce.number().int().min(1).max(100_000).catch(1),
-})
-export type IngredientBookQuery = z.output<typeof ingredientBookQuery>
-
 export const ingredientsListKey = '/api/ingredients'
 export const ingredientsKey = (q: string) => `/api/ingredients?q=${encodeURIComponent(q)}`
 export const ingredientKey = (id: string) => `/api/ingredients/${id}`

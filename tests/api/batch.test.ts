@@ -353,7 +353,7 @@ describe('what others see', () => {
 
   it('lists batches by state and words; a client sees none', async () => {
     const found = await call(LIST, { cookie: lena.cookie, query: { q: 'q1', state: 'resting' } })
-    expect(found.body).toMatchObject([{ code: 'Q1-1', lines: 2, linesWeighed: 2, formulaName: 'Cream' }])
+    expect(found.body.rows).toMatchObject([{ code: 'Q1-1', lines: 2, linesWeighed: 2, formulaName: 'Cream' }])
     expect((await call(LIST, { cookie: lena.cookie, query: { sort: 'x', state: 'y' } })).status).toBe(200)
     const client = await t.person('client')
     for (const route of [LIST, GET]) {

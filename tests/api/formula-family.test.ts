@@ -353,7 +353,7 @@ describe('the comparison', () => {
 
   it('takes at most eight statements for twelve', async () => {
     const all = await call(LIST, { cookie: lena.cookie })
-    const codes = all.body.slice(0, 12).map((row: { code: string }) => `code=${row.code}`)
+    const codes = all.body.rows.slice(0, 12).map((row: { code: string }) => `code=${row.code}`)
     expect(codes).toHaveLength(12)
     const { count } = await countStatements(() => compare(codes.join('&')))
     expect(count).toBeLessThanOrEqual(8)

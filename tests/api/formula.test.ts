@@ -289,13 +289,13 @@ describe('the list', () => {
       line('B', 'Aqua', 80, { density: 1 }),
     ])
     const all = await call(LIST, { cookie: lena.cookie })
-    expect(all.body[0].code).toBe('N9')
+    expect(all.body.rows[0].code).toBe('N9')
     // 80 / 1 of 80 / 1 + 20 / 0.8 mL
-    expect(all.body[0].internalVolumePercent).toBeCloseTo(76.19, 2)
-    expect(all.body[0].isHighInternalPhase).toBe(true)
+    expect(all.body.rows[0].internalVolumePercent).toBeCloseTo(76.19, 2)
+    expect(all.body.rows[0].isHighInternalPhase).toBe(true)
     const found = await call(LIST, { cookie: lena.cookie, query: { q: 'cream n3', sort: 'batches' } })
-    expect(found.body.map((row: { code: string }) => row.code)).toEqual(['N30'])
-    expect(found.body[0].batches).toEqual([{ code: 'N30-1', state: 'making' }])
+    expect(found.body.rows.map((row: { code: string }) => row.code)).toEqual(['N30'])
+    expect(found.body.rows[0].batches).toEqual([{ code: 'N30-1', state: 'making' }])
     const odd = await call(LIST, { cookie: lena.cookie, query: { sort: 'nothing', order: 'x' } })
     expect(odd.status).toBe(200)
   })

@@ -1,12 +1,13 @@
 import type { Metadata } from 'next'
 import { FormulaList } from '@/components/formula/formula-list'
-import { ListSearch } from '@/components/formula/list-search'
 import { Heading } from '@/components/ui/heading'
 import { LinkButton } from '@/components/ui/link-button'
 import { may } from '@/lib/auth/permissions'
 import { listFormulas } from '@/lib/formula/queries/list-formulas'
-import { formulaListQuery } from '@/lib/formula/schema'
+import { formulaList } from '@/lib/formula/rules/list'
+import { grouped } from '@/lib/number/rules'
 import { page } from '@/lib/http/page'
+import { getLab } from '@/lib/lab/queries'
 
 export const permission = 'formula.read'
 export const metadata: Metadata = { title: 'Formulas' }
@@ -15,30 +16,30 @@ type Props = { searchParams: Promise<Record<string, string | string[] | undefine
 
 export default async function FormulasPage({ searchParams }: Props) {
   const { actor, db } = await page(permission)
-  const query = formulaListQuery.parse(await searchParams)
-  const formulas = await listFormulas(db, actor, query)
+  const query = formulaList.query.parse(await searchParams)
+  const found = await listFormulas(db, actor, query)
+  const { timeZone } = await getLab(db)
+  const { all, high, drafts } = found.counts
   const mayWrite = may(actor, 'formula.write')
-  const high = formulas.filter((formula) => formula.isHighInternalPhase).length
-  const drafts = formulas.filter((formula) => formula.state === 'draft').length
   return (
     <>
       <Heading
         crumb={query.q ? `Formulas with ${query.q}` : 'Formulas'}
         headline={
-          formulas.length ? (
+          all ? (
             <>
               <b>
-                {high} of {formulas.length}
+                {grouped(high, 0)} of {grouped(all, 0)}
               </b>{' '}
-              {formulas.length === 1 ? 'formula is' : 'formulas are'} past the closest packing
+              {all === 1 ? 'formula is' : 'formulas are'} past the closest packing
             </>
           ) : (
             <>Nothing to weigh yet</>
           )
         }
         sentence={
-          formulas.length
-            ? `More than 74.0 % inside, by volume. ${drafts === 1 ? 'One is' : `${drafts} are`} still a draft.`
+          all
+            ? `More than 74.0 % inside, by volume. ${drafts === 0 ? 'None is' : drafts === 1 ? 'One is' : `${grouped(drafts, 0)} are`} still a draft.`
             : undefined
         }
         acts={
@@ -49,17 +50,8 @@ export default async function FormulasPage({ searchParams }: Props) {
           ) : undefined
         }
       />
-      <div className="mt-6">
-        <ListSearch
-          action="/formulas"
-          label="Find a formula"
-          placeholder="Code, name, type or INCI name"
-          q={query.q}
-          kept={{ sort: query.sort, order: query.order }}
-        />
-      </div>
-      <div className="mt-4">
-        <FormulaList formulas={formulas} query={query} mayWrite={mayWrite} />
+      <div className="mt-5">
+        <FormulaList page={found} query={query} mayWrite={mayWrite} timeZone={timeZone} />
       </div>
     </>
   )

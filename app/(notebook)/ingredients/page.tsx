@@ -3,7 +3,7 @@ import { IngredientBook } from '@/components/ingredient/ingredient-book'
 import { may } from '@/lib/auth/permissions'
 import { page } from '@/lib/http/page'
 import { listIngredientBook } from '@/lib/ingredient/queries'
-import { ingredientBookQuery } from '@/lib/ingredient/schema'
+import { ingredientList } from '@/lib/ingredient/rules'
 import { getLab } from '@/lib/lab/queries'
 
 export const permission = 'formula.read'
@@ -13,7 +13,7 @@ type Props = { searchParams: Promise<Record<string, string | string[] | undefine
 
 export default async function IngredientsPage({ searchParams }: Props) {
   const { actor, db } = await page(permission)
-  const query = ingredientBookQuery.parse(await searchParams)
+  const query = ingredientList.query.parse(await searchParams)
   const [book, lab] = [await listIngredientBook(db, actor, query), await getLab(db)]
   return (
     <IngredientBook

@@ -1,11 +1,12 @@
 import { createBatch } from '@/lib/batch/commands/create-batch'
 import { listBatches } from '@/lib/batch/queries/list-batches'
-import { batchListQuery, createBatchInput } from '@/lib/batch/schema'
+import { batchList } from '@/lib/batch/rules/list'
+import { createBatchInput } from '@/lib/batch/schema'
 import { read, write } from '@/lib/http/route'
 
 export const GET = read({
   permission: 'batch.read',
-  query: batchListQuery,
+  query: batchList.query,
   handler: ({ db, actor, query }) => listBatches(db, actor, query),
 })
 

@@ -1,11 +1,12 @@
 import { createFormula } from '@/lib/formula/commands/create-formula'
 import { listFormulas } from '@/lib/formula/queries/list-formulas'
-import { createFormulaInput, formulaListQuery } from '@/lib/formula/schema'
+import { formulaList } from '@/lib/formula/rules/list'
+import { createFormulaInput } from '@/lib/formula/schema'
 import { read, write } from '@/lib/http/route'
 
 export const GET = read({
   permission: 'formula.read',
-  query: formulaListQuery,
+  query: formulaList.query,
   handler: ({ db, actor, query }) => listFormulas(db, actor, query),
 })
 

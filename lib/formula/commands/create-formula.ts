@@ -3,6 +3,7 @@ import type { Actor } from '@/lib/auth/actor'
 import type { Trx } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
 import type { CreateFormulaInput } from '../schema'
+import { keepFigures } from './figures'
 import { assertIngredients, insertLines, insertSteps } from './lines'
 
 /** A formula with its first version, a draft. The same id again answers with what stands. */
@@ -37,6 +38,7 @@ export async function createFormula(trx: Trx, actor: Actor, input: CreateFormula
     .execute()
   await insertLines(trx, versionId, input.lines)
   await insertSteps(trx, versionId, input.steps)
+  await keepFigures(trx, [{ formulaId: id, versionId, lines: input.lines }])
   return { id, code, versionId, number: 1 }
 }
 

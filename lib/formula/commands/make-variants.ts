@@ -12,6 +12,7 @@ import {
   type Level,
 } from '../rules/variants'
 import type { MakeVariantsInput } from '../schema'
+import { keepFigures } from './figures'
 
 type Base = Awaited<ReturnType<typeof findBase>>
 
@@ -73,6 +74,14 @@ export async function makeVariants(trx: Trx, actor: Actor, code: string, input: 
     })),
   )
   await trx.insertInto('formulaLine').values(newLines).execute()
+  await keepFigures(
+    trx,
+    input.members.map((member) => ({
+      formulaId: member.id,
+      versionId: member.versionId,
+      lines: newLines.filter((line) => line.formulaVersionId === member.versionId),
+    })),
+  )
   const newSteps = input.members.flatMap((member) =>
     steps.map((step) => ({ ...step, id: newId(), formulaVersionId: member.versionId })),
   )

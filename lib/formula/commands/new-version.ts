@@ -3,6 +3,7 @@ import type { Trx } from '@/lib/db/client'
 import { newId } from '@/lib/db/id'
 import { refuse } from '@/lib/http/errors'
 import type { NewVersionInput } from '../schema'
+import { keepFigures } from './figures'
 
 /** A draft that begins as a copy of another version. One draft at a time, so that nobody works on two. */
 export async function newFormulaVersion(trx: Trx, actor: Actor, code: string, input: NewVersionInput) {
@@ -40,8 +41,9 @@ export async function newFormulaVersion(trx: Trx, actor: Actor, code: string, in
       ...{ targetPhLow: from.targetPhLow, targetPhHigh: from.targetPhHigh },
     })
     .execute()
-  await copyLines(trx, input.fromVersionId, input.id)
+  const lines = await copyLines(trx, input.fromVersionId, input.id)
   await copySteps(trx, input.fromVersionId, input.id)
+  await keepFigures(trx, [{ formulaId: formula.id, versionId: input.id, lines }])
   return { id: input.id, number }
 }
 
@@ -52,9 +54,9 @@ async function copyLines(trx: Trx, from: string, to: string) {
     .select(['isInternal', 'isRemainder', 'priceCentsPerKg'])
     .where('formulaVersionId', '=', from)
     .execute()
-  if (!lines.length) return
   const rows = lines.map((line) => ({ ...line, id: newId(), formulaVersionId: to }))
-  await trx.insertInto('formulaLine').values(rows).execute()
+  if (rows.length) await trx.insertInto('formulaLine').values(rows).execute()
+  return lines
 }
 
 async function copySteps(trx: Trx, from: string, to: string) {

@@ -3,6 +3,7 @@ import type { Trx } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
 import { findDraftChange } from '../queries/last-change'
 import type { SaveFormulaInput } from '../schema'
+import { keepFigures } from './figures'
 import { assertIngredients, replaceLines, replaceSteps } from './lines'
 
 /** Saves a draft as a whole. A locked version and a draft that someone else saved meanwhile are refused. */
@@ -34,6 +35,7 @@ export async function saveFormula(trx: Trx, _actor: Actor, code: string, input: 
   }
   await replaceLines(trx, input.versionId, input.lines)
   await replaceSteps(trx, input.versionId, input.steps)
+  await keepFigures(trx, [{ formulaId: draft.formulaId, versionId: input.versionId, lines: input.lines }])
   return trx
     .updateTable('formulaVersion')
     .set({

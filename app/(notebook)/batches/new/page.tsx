@@ -1,7 +1,6 @@
 import type { Metadata } from 'next'
 import { SizeBatch } from '@/components/batch/size-batch'
-import { listFormulas } from '@/lib/formula/queries/list-formulas'
-import { formulaListQuery } from '@/lib/formula/schema'
+import { listLatestVersions } from '@/lib/formula/queries/list-formulas'
 import { page } from '@/lib/http/page'
 import { listProtocols } from '@/lib/protocol/queries'
 
@@ -13,15 +12,10 @@ type Props = { searchParams: Promise<Record<string, string | string[] | undefine
 export default async function NewBatchPage({ searchParams }: Props) {
   const { actor, db } = await page(permission)
   const { formula } = await searchParams
-  const [formulas, protocols] = await Promise.all([
-    listFormulas(db, actor, formulaListQuery.parse({})),
-    listProtocols(db, actor),
-  ])
+  const [formulas, protocols] = await Promise.all([listLatestVersions(db, actor), listProtocols(db, actor)])
   return (
     <SizeBatch
-      formulas={formulas.map(({ code, name, versionId, versionNumber }) => ({
-        ...{ code, name, versionId, versionNumber },
-      }))}
+      formulas={formulas}
       protocols={protocols.map(({ code, name, versionId, number, plan }) => ({
         ...{ code, name, versionId, number, plan },
       }))}

@@ -1,9 +1,9 @@
 import { listIngredientBook } from '@/lib/ingredient/queries'
-import { ingredientBookQuery } from '@/lib/ingredient/schema'
+import { ingredientList } from '@/lib/ingredient/rules'
 import { read } from '@/lib/http/route'
 
 export const GET = read({
   permission: 'formula.read',
-  query: ingredientBookQuery,
+  query: ingredientList.query,
   handler: ({ db, actor, query }) => listIngredientBook(db, actor, query),
 })
