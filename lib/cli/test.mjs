@@ -48,13 +48,19 @@ async function main() {
   })
   const env = { ...testEnv(), TEST_DATABASE_ADMIN_URL: cluster.url('admin', 'postgres') }
 
-  await check('Format', env, 'prettier', ['--check', '.'])
-  await check('Lint', env, 'eslint', ['.', '--max-warnings', '0'])
-  await check('Types', env, 'tsc', ['--noEmit'], () =>
-    // Types of the routes and next-env.d.ts, which is not committed.
-    run(process.execPath, [nextProgram(root), 'typegen'], { cwd: root, env }),
-  )
-  await check('Generated types', env, 'tsx', ['lib/cli/types.ts', '--check'])
+  // Each of these keeps one core busy, so they share the two that there are.
+  const style = async () => {
+    await check('Format', env, 'prettier', ['--check', '.'])
+    await check('Lint', env, 'eslint', ['.', '--max-warnings', '0'])
+  }
+  const types = async () => {
+    await check('Types', env, 'tsc', ['--noEmit'], () =>
+      // Types of the routes and next-env.d.ts, which is not committed.
+      run(process.execPath, [nextProgram(root), 'typegen'], { cwd: root, env }),
+    )
+    await check('Generated types', env, 'tsx', ['lib/cli/types.ts', '--check'])
+  }
+  await Promise.all([style(), types()])
   await vitest('unit', env)
   await vitest('api', env)
   if (await builds(env)) await playwright(env)

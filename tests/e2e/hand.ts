@@ -23,8 +23,9 @@ export class Hand {
     await field.fill(text)
   }
 
+  /** A list is reached by Tab and answered by the first letters of what is wanted. */
   async choose(list: Locator, option: Parameters<Locator['selectOption']>[0]) {
-    this.seconds += 2 * (thinkSeconds + pointSeconds + pressSeconds)
+    this.seconds += thinkSeconds + 4 * keySeconds
     await list.selectOption(option)
   }
 

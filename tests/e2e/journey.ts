@@ -97,7 +97,7 @@ export async function makeBatch(page: Page, hand: Hand, recipe: Recipe, making: 
   await hand.type(page.getByLabel('Conductivity'), making.conductivity)
   await hand.press(page.getByRole('button', { name: 'Keep the result' }))
   await expect(page.getByRole('heading', { level: 1 })).toHaveText(/, as designed$/)
-  await hand.type(page.getByLabel('Reason'), 'Smooth after an hour; a screen may start on it today.')
+  await hand.type(page.getByLabel('Reason'), 'The screen starts today.')
   await hand.press(page.getByRole('button', { name: new RegExp(`^Release ${recipe.code}-`) }))
   await expect(page.getByRole('heading', { level: 1 })).toHaveText(/ g released for jars$/)
   return decodeURIComponent(new URL(page.url()).pathname.split('/').at(-1)!)
