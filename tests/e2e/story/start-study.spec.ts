@@ -1,4 +1,6 @@
 import type { Page } from '@playwright/test'
+import { Hand } from '../hand'
+import { makeBatch, takeReadyMade, type Recipe } from '../journey'
 import { pressIn } from '../people'
 import { expect, test } from '../watch'
 
@@ -12,6 +14,15 @@ const lines: [phase: 'A' | 'B', name: string, share: string][] = [
   ['B', 'Magnesium Sulfate', '0.7'],
   ['B', 'Phenoxyethanol', '0.8'],
 ]
+/** As it stands once it is typed: what its batches are weighed and stirred by. */
+const recipe: Recipe = {
+  ...{ code: 'W88', name: 'silicone-free cream', emulsionType: 'water-in-oil', internalPhase: 'B' },
+  lines: lines.map(([phase, inciName, share]) => ({ phase, inciName, share, function: '', density: '' })),
+  steps: [1, 2].map(() => ({ phase: '', instruction: '', rpm: '310', minutes: '44', temperature: '27.5' })),
+}
+const made = { typeShown: 'water-in-oil', conductivity: '0.4' }
+const hand = new Hand()
+
 /** By hand: 86.77 mL inside of 99.80 mL. */
 const insideVolume = '86.9 %'
 /** By hand: 4 stations of 1 + 9 + 1 jars, 1 + 5 + 1 in freeze-thaw, 1 for the initial and 2 retained, 30 g each. */
@@ -25,17 +36,13 @@ test('The story, formulator: from a formula by batch and protocol to standing ja
   await expect(page).toHaveURL(/\/studies$/)
   await test.step('writes a formula and sees what is inside while typing', () => writeFormula(page))
   await test.step('makes two batches', async () => {
-    await makeBatch(page, 1000, 950)
+    await makeBatch(page, hand, recipe, { ...made, sizeG: 1000, yieldG: 950 })
     await page.getByRole('link', { name: 'silicone-free cream, version 1' }).click()
-    await makeBatch(page, 1900, 1850)
+    await makeBatch(page, hand, recipe, { ...made, sizeG: 1900, yieldG: 1850 })
   })
   await test.step('takes a ready-made protocol', async () => {
     await page.getByRole('link', { name: 'Protocols', exact: true }).click()
-    await page.getByRole('button', { name: 'Take a ready-made one' }).click()
-    const dialog = page.getByRole('dialog')
-    await dialog.getByRole('radio', { name: 'Prototype screen, 12 weeks' }).check()
-    await dialog.getByLabel('On what').selectOption({ label: 'high-internal-phase cream' })
-    await dialog.getByRole('button', { name: 'Take it' }).click()
+    await takeReadyMade(page, hand, 'Prototype screen, 12 weeks', 'high-internal-phase cream')
     await expect(page.getByRole('heading', { level: 1 })).toHaveText(/: 54 jars a batch$/)
   })
   await test.step('is refused what the batch cannot fill, then starts', () => startStudy(page))
@@ -89,39 +96,6 @@ async function save(page: Page) {
   const saved = page.waitForResponse((answer) => answer.request().method() === 'PUT')
   await page.getByRole('button', { name: 'Save the draft' }).click()
   expect((await saved).status()).toBe(200)
-}
-
-async function makeBatch(page: Page, sizeG: number, yieldG: number) {
-  await page.getByRole('button', { name: 'Make a batch' }).click()
-  await page.getByRole('dialog').getByLabel('Size').fill(String(sizeG))
-  await page.getByRole('dialog').getByRole('button', { name: 'Make the batch' }).click()
-  await expect(page).toHaveURL(/\/batches\/W88-\d$/)
-  for (const [, name, share] of lines) {
-    const percent = share === 'qs' ? 81.5 : Number(share)
-    const weight = page.getByRole('textbox', { name: `Weight of ${name} in g` })
-    await weight.fill(((sizeG * percent) / 100).toFixed(2))
-    await expect(page.getByText('Within what is allowed')).toBeVisible()
-    await weight.press('Enter')
-  }
-  for (const number of [1, 2]) {
-    const done = page.getByRole('button', { name: `Step ${number} is done` })
-    await expect(done).toBeVisible()
-    await page.getByLabel('Speed').fill('310')
-    await page.getByLabel('Time').fill('44')
-    await page.getByLabel('Temperature').fill('27.5')
-    await done.click()
-  }
-  await page.getByLabel('Yield').fill(String(yieldG))
-  await page.getByLabel('Jar and closure').fill('screw cap')
-  await page.getByRole('button', { name: 'Made, let it rest' }).click()
-  await page.getByLabel('Tested by').selectOption('conductivity')
-  await page.getByLabel('It showed').selectOption('water-in-oil')
-  await page.getByLabel('Conductivity').fill('0.4')
-  await page.getByRole('button', { name: 'Keep the result' }).click()
-  await expect(page.getByRole('heading', { level: 1 })).toHaveText('Water-in-oil, as designed')
-  await page.getByLabel('Reason').fill('Smooth after an hour; a screen may start on it today.')
-  await page.getByRole('button', { name: /^Release W88-/ }).click()
-  await expect(page.getByRole('heading', { level: 1 })).toHaveText(/ g released for jars$/)
 }
 
 async function startStudy(page: Page) {
