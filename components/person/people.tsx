@@ -17,10 +17,9 @@ import type { Role } from '@/lib/auth/actor'
 import type { PersonRow } from '@/lib/person/queries'
 import { peopleKey, personKey } from '@/lib/person/schema'
 import { Clients } from './clients'
-import { LabForm } from './lab-form'
 import { ChangePerson, InvitePerson } from './person-dialogs'
 
-export function People({ ownId, timeZones }: { ownId: string; timeZones: string[] }) {
+export function People({ ownId }: { ownId: string }) {
   const { data: people = [], mutate } = useSWR<PersonRow[], ClientError>(peopleKey, fetcher)
   const { data: clients = [] } = useSWR<ClientRow[], ClientError>(clientsKey, fetcher)
   const [isInviting, setInviting] = useState(false)
@@ -75,9 +74,6 @@ export function People({ ownId, timeZones }: { ownId: string; timeZones: string[
           sentence="A client’s people see the studies shared with it, and its signed reports."
         >
           <Clients clients={clients} />
-        </Section>
-        <Section title="The lab" sentence="Days, pulls and mails follow its clock.">
-          <LabForm timeZones={timeZones} />
         </Section>
       </div>
       {isInviting ? (

@@ -19,6 +19,7 @@ const entries: Entry[] = [
   { href: '/cases', label: 'Cases', permission: 'case.read' },
   { href: '/reports', label: 'Reports', permission: 'report.read' },
   { href: '/trail', label: 'Record', permission: 'trail.read' },
+  { href: '/lab', label: 'Lab', permission: 'bench.read' },
   { href: '/people', label: 'People', permission: 'person.manage' },
   { href: '/mails', label: 'Mail', permission: 'mail.read', isHidden: ({ hasMailFake }) => !hasMailFake },
 ]

@@ -5,6 +5,7 @@ import type { ProtocolRow } from '@/lib/protocol/queries'
 import { startsAtZero } from '@/lib/reading/schema/attributes'
 import { jarsFromGrams } from '@/lib/science/jar-grams'
 import type { ReleasedBatch } from '@/lib/study/queries/batches'
+import type { LabWorkload } from '@/lib/study/queries/workload'
 import { adjustedPlan, waysToFit } from '@/lib/study/rules/plan'
 import { chosenStations } from '@/lib/study/rules/stations'
 import type { StationRow } from '@/lib/station/queries/stations'
@@ -16,6 +17,8 @@ export type Offer = {
   stations: StationRow[]
   clients: { id: string; name: string }[]
   instruments: { id: string; code: string; name: string; kind: string; isActive: boolean }[]
+  /** Its days, and what running studies ask of it already. */
+  lab: LabWorkload
 }
 
 export type Draft = {

@@ -19,6 +19,7 @@ import { studyKeys } from '@/lib/study/schema'
 import { grouped } from '@/lib/number/rules'
 import { InitialFields } from './initial-fields'
 import { NeedPart } from './need-part'
+import { StartCalendar } from './start-calendar'
 import { StationChoices } from './station-choices'
 import { bodyOf, emptyDraft, needsOf, planOf, whyNot, type Draft, type Need, type Offer } from './start-state'
 
@@ -140,6 +141,7 @@ export function StartStudyForm({ offer, batchCode, protocolCode }: Props) {
             </div>
           </Section>
           {plan ? <StationChoices offer={offer} draft={draft} plan={plan} set={set} /> : null}
+          {plan ? <StartCalendar plan={plan} batchCount={draft.batchIds.length} lab={offer.lab} /> : null}
         </div>
         <div className="grid content-start gap-8">
           {needs.map((need) => (

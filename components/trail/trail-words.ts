@@ -14,6 +14,7 @@ export const tableWords: Record<string, string> = {
   formula_line: 'line of a formula',
   formula_step: 'process step of a formula',
   formula_version: 'version of a formula',
+  holiday: 'holiday',
   ingredient: 'ingredient',
   instrument: 'instrument',
   jar: 'jar',

@@ -5,6 +5,7 @@ import { isSetUp } from '@/lib/lab/queries'
 import { amendStory } from './seed/amend'
 import { fillCases } from './seed/cases'
 import { openFilling, type Filling } from './seed/context'
+import { fillDays } from './seed/days'
 import { batchesOf, layGround, tell, tellFinished } from './seed/finished'
 import { markFilled } from './seed/people'
 import { fillPhotos } from './seed/photos'
@@ -118,5 +119,6 @@ async function fill(open: Omit<Filling, 'people'>): Promise<void> {
   await answerFormulas(filling)
   await answerFlags(filling)
   await fillCases(filling, { finished, waiting })
+  await fillDays(filling)
   await markFilled(filling)
 }

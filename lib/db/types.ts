@@ -307,6 +307,14 @@ export interface FormulaVersion {
   version: Generated<number>
 }
 
+export interface Holiday {
+  addedAt: Generated<string>
+  addedBy: string
+  day: string
+  id: string
+  name: string
+}
+
 export interface IdempotencyAnswer {
   actorId: string
   answer: string | null
@@ -388,10 +396,12 @@ export interface Lab {
   createdAt: Generated<string>
   demoFilledAt: string | null
   id: string
+  labelGrid: unknown | null
   name: string
   settings: Generated<unknown>
   timeZone: string
   version: Generated<number>
+  workingDays: Generated<number[]>
 }
 
 export interface Password {
@@ -763,6 +773,7 @@ export interface DB {
   formulaLine: FormulaLine
   formulaStep: FormulaStep
   formulaVersion: FormulaVersion
+  holiday: Holiday
   idempotencyAnswer: IdempotencyAnswer
   ingredient: Ingredient
   instrument: Instrument

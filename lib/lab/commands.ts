@@ -39,11 +39,15 @@ export async function setUpLab(trx: Trx, input: LabToSetUp): Promise<string> {
   return openSession(trx, id, false)
 }
 
-export async function changeLab(trx: Trx, _actor: Actor, input: LabToChange) {
+export async function changeLab(trx: Trx, _actor: Actor, { version, labelGrid, ...fields }: LabToChange) {
   const changed = await trx
     .updateTable('lab')
-    .set({ name: input.name, timeZone: input.timeZone, version: input.version + 1 })
-    .where('version', '=', input.version)
+    .set({
+      ...fields,
+      ...(labelGrid === undefined ? {} : { labelGrid: labelGrid && JSON.stringify(labelGrid) }),
+      version: version + 1,
+    })
+    .where('version', '=', version)
     .returning(['id', 'name', 'timeZone', 'version'])
     .executeTakeFirst()
   if (changed) return changed

@@ -1,11 +1,13 @@
 import type { Db } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
+import type { LabelGrid } from '@/lib/label/rules/grid'
 
 /** Null before the first set-up. */
 export async function findLab(db: Db) {
   const lab = await db
     .selectFrom('lab')
-    .select(['id', 'name', 'timeZone', 'demoFilledAt', 'version'])
+    .select(['id', 'name', 'timeZone', 'workingDays', 'demoFilledAt', 'version'])
+    .select((eb) => eb.ref('labelGrid').$castTo<LabelGrid | null>().as('labelGrid'))
     .executeTakeFirst()
   return lab ?? null
 }

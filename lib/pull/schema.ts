@@ -16,7 +16,25 @@ export type OpeningOfJar = z.output<typeof openingOfJar>
 export type TakingOut = z.output<typeof takingOut>
 export type MissedJar = z.output<typeof missedJar>
 
+const day = z.iso.date()
+
+/** Pulls that leave a closed day, each with the day on which it stood when this was chosen. */
+export const movedPulls = z.object({
+  moves: z
+    .array(z.object({ pullId: z.uuid(), from: day, to: day }))
+    .min(1, 'Choose at least one pull.')
+    .max(2000)
+    .refine(
+      (list) => new Set(list.map((one) => one.pullId)).size === list.length,
+      'A pull stands twice in the list.',
+    ),
+  reason: z.string().trim().min(1, 'Say why the pulls are moved.').max(500),
+})
+export type MovedPulls = z.output<typeof movedPulls>
+
 export const pullKeys = {
+  /** Planned pulls on days on which the lab does not work, and where they go. */
+  moves: '/api/pulls/moves',
   open: (pullJarId: string) => `/api/pulls/${pullJarId}/open`,
   takeOut: (pullJarId: string) => `/api/pulls/${pullJarId}/take-out`,
   miss: (pullJarId: string) => `/api/pulls/${pullJarId}/miss`,

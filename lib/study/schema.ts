@@ -126,6 +126,9 @@ export const seriesAddress = z.object({
 })
 export type SeriesAddress = z.infer<typeof seriesAddress>
 
+/** Jars to measure by day, of all running studies. */
+export const workloadKey = '/api/workload'
+
 export const studyKeys = {
   list: (filter: StudyFilter) =>
     `/api/studies?${new URLSearchParams({ is: filter.is, q: filter.q, standing: filter.standing, sort: filter.sort })}`,

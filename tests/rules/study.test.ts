@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { readyMadePlan } from '@/lib/protocol/rules/ready-made'
-import { addDays, dayIn, pullsOf, spokenDay, weeksBetween } from '@/lib/study/rules/calendar'
+import { addDays, dayIn, spokenDay, weeksBetween } from '@/lib/study/rules/calendar'
 import { studyFinding, type FindingInput, type FindingSeries } from '@/lib/study/rules/finding'
 import { plannedJars } from '@/lib/study/rules/jars'
 import { adjustedPlan, waysToFit } from '@/lib/study/rules/plan'
@@ -17,17 +17,6 @@ describe('the calendar', () => {
     expect(dayIn('America/New_York', '2026-10-11T02:30:00Z')).toBe('2026-10-10')
     expect(spokenDay('2026-03-02')).toBe('2 Mar 2026')
     expect(spokenDay('2026-09-08')).toBe('8 Sep 2026')
-  })
-
-  it('gives each pull its window', () => {
-    const station = { ...readyMadePlan('screen', 'lotion').stations[0]!, timePoints: [1, 2], windowDays: 2 }
-    expect(pullsOf(station, '2026-09-08', 12)[1]).toEqual({
-      timeWeeks: 2,
-      label: 'week 2',
-      dueOn: '2026-09-22',
-      windowFrom: '2026-09-20',
-      windowTo: '2026-09-24',
-    })
   })
 })
 

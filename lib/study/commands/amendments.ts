@@ -2,6 +2,7 @@ import { sql } from 'kysely'
 import type { Actor } from '@/lib/auth/actor'
 import type { Trx } from '@/lib/db/client'
 import { newId } from '@/lib/db/id'
+import { getCalendar } from '@/lib/holiday/queries'
 import { refuse } from '@/lib/http/errors'
 import { isJarCode, readJarCode } from '@/lib/jar/rules'
 import { askedAt, pullLabel, stationName } from '@/lib/protocol/rules/plan'
@@ -9,14 +10,16 @@ import { mean } from '@/lib/science/mean'
 import { loadFrame } from '@/lib/series/queries/frame'
 import { initialOf } from '@/lib/series/rules/input'
 import {
-  dueOfNewTime,
   jarsOfNewTime,
+  refuseNewTime,
   withoutFuture,
   withTime,
   withTolerance,
 } from '@/lib/study/rules/amendments'
-import { addDays, spokenDay } from '@/lib/study/rules/calendar'
+import { spokenDay } from '@/lib/study/rules/calendar'
+import { laidWhy, windowOf } from '@/lib/study/rules/pulls'
 import { capital, counted } from '@/lib/study/rules/words'
+import { layOut } from '@/lib/study/rules/working-days'
 import type { AmendmentOf } from '@/lib/study/schema'
 import type { Amended, AmendedStudy } from './amend-study'
 
@@ -28,7 +31,7 @@ export async function addTimePoint(
   input: AmendmentOf<'time point'>,
 ): Promise<Amended> {
   const station = await getStation(trx, study, input.studyStationId)
-  const dueOn = dueOfNewTime(study.plan, station, input.week, study)
+  refuseNewTime(study.plan, station, input.week, study)
   const plan = withTime(study.plan, station.position, input.week)
   const planned = plan.stations[station.position]!
   const name = stationName(planned, station.position)
@@ -42,6 +45,9 @@ export async function addTimePoint(
     })),
     input.isMeasured,
   )
+  const window = windowOf(study.startedOn, input.week, planned.windowDays)
+  const [laid] = layOut([window], await getCalendar(trx), { notBefore: study.today })
+  const { dueOn, windowFrom, windowTo } = laid!
   const pullId = newId()
   await trx
     .insertInto('pull')
@@ -52,8 +58,8 @@ export async function addTimePoint(
       timeWeeks: input.week,
       label: pullLabel(planned, input.week, study.endWeeks),
       dueOn,
-      windowFrom: addDays(dueOn, -planned.windowDays),
-      windowTo: addDays(dueOn, planned.windowDays),
+      windowFrom,
+      windowTo,
     })
     .execute()
   await trx
@@ -63,7 +69,7 @@ export async function addTimePoint(
   const spares = jars.filter((jar) => jar.asks === 'measuring').length
   const taken = spares === 0 ? 'the watch jars alone' : `${counted(spares, 'spare jar')} opened`
   return {
-    sentence: `Week ${input.week} is added at ${name}, due on ${spokenDay(dueOn)}, ${taken}.`,
+    sentence: `Week ${input.week} is added at ${name}, due on ${spokenDay(dueOn)}${laidWhy(laid!)}, ${taken}.`,
     studyStationId: station.id,
     before: { timePoints: study.plan.stations[station.position]!.timePoints },
     after: { timePoints: planned.timePoints },

@@ -7,9 +7,10 @@ import { variantOf } from '@/lib/protocol/rules/plan'
 import type { PlannedStation, ProtocolPlan } from '@/lib/protocol/schema'
 import { listTakenPlaces } from '@/lib/station/queries/places'
 import { freePlaces } from '@/lib/station/rules/places'
-import { pullsOf } from '@/lib/study/rules/calendar'
 import type { InitialRow } from '@/lib/study/rules/initial'
 import { plannedJars } from '@/lib/study/rules/jars'
+import { pullsOf } from '@/lib/study/rules/pulls'
+import type { LabCalendar } from '@/lib/study/rules/working-days'
 
 // What a started study consists of: one statement a table, whatever the number of jars.
 
@@ -55,14 +56,24 @@ export async function insertPulls(
   plan: ProtocolPlan,
   stations: StudyStation[],
   startedOn: string,
+  calendar: LabCalendar,
 ): Promise<PullRow[]> {
   const rows = plan.stations.flatMap((station, position) =>
-    pullsOf(station, startedOn, plan.endWeeks).map((pull) => ({ ...pull, id: newId(), position })),
+    pullsOf(station, startedOn, plan.endWeeks, calendar).map((pull) => ({ ...pull, id: newId(), position })),
   )
   await trx
     .insertInto('pull')
     .values(
-      rows.map(({ position, ...pull }) => ({ ...pull, studyId, studyStationId: stations[position]!.id })),
+      rows.map(({ id, position, timeWeeks, label, dueOn, windowFrom, windowTo }) => ({
+        id,
+        studyId,
+        studyStationId: stations[position]!.id,
+        timeWeeks,
+        label,
+        dueOn,
+        windowFrom,
+        windowTo,
+      })),
     )
     .execute()
   return rows

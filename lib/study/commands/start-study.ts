@@ -2,6 +2,7 @@ import { sql } from 'kysely'
 import type { Actor } from '@/lib/auth/actor'
 import type { Trx } from '@/lib/db/client'
 import { newId } from '@/lib/db/id'
+import { calendarOfLab } from '@/lib/holiday/queries'
 import { refuse } from '@/lib/http/errors'
 import { findProtocolVersion } from '@/lib/protocol/queries'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
@@ -25,6 +26,7 @@ import { notStarted, refuseInPart } from '@/lib/study/rules/in-part'
 import { adjustedPlan, startedPositions } from '@/lib/study/rules/plan'
 import { refuseBatch, refusePlan, refuseShortBatch, refuseStations } from '@/lib/study/rules/refusals'
 import { chosenStations } from '@/lib/study/rules/stations'
+import type { LabCalendar } from '@/lib/study/rules/working-days'
 import type { StartedStudy } from '@/lib/study/schema'
 
 /**
@@ -38,7 +40,7 @@ export async function startStudy(
   input: StartedStudy,
   random: () => number = Math.random,
 ) {
-  const { now, timeZone, nextNumber } = await holdStarts(trx)
+  const { now, calendar, nextNumber } = await holdStarts(trx)
   const same = await trx
     .selectFrom('study')
     .select(['id', 'code'])
@@ -80,7 +82,7 @@ export async function startStudy(
       .where('id', '=', version.id)
       .execute()
   }
-  const startedOn = dayIn(timeZone, startedAt)
+  const startedOn = dayIn(calendar.timeZone, startedAt)
   await trx
     .insertInto('study')
     .values({
@@ -105,7 +107,7 @@ export async function startStudy(
     batches.map((batch) => batch.id),
   )
   const studyStations = await insertStations(trx, input.id, plan, stations)
-  const pulls = await insertPulls(trx, input.id, plan, studyStations, startedOn)
+  const pulls = await insertPulls(trx, input.id, plan, studyStations, startedOn, calendar)
   const jars = await insertJars(trx, input.id, plan, batches, studyStations, random)
   await insertPullJars(trx, input.id, jars, pulls)
   await insertInitial(trx, actor, input.id, initial, startedAt)
@@ -142,9 +144,8 @@ function choicesOf(plan: ProtocolPlan, { adjustments, stationChoices }: StartedS
  */
 async function holdStarts(trx: Trx) {
   await holdPlaces(trx)
-  const { rows } = await sql<{ now: string; timeZone: string; nextNumber: number }>`
-    select app_now() as now,
-      coalesce((select time_zone from lab), 'UTC') as "timeZone",
+  const { rows } = await sql<{ now: string; calendar: LabCalendar; nextNumber: number }>`
+    select app_now() as now, ${calendarOfLab} as calendar,
       coalesce((select max(substring(code from '^S-(\\d{1,6})$')::integer) from study), 0) + 1 as "nextNumber"
   `.execute(trx)
   return rows[0]!

@@ -6,22 +6,22 @@ import { refuse } from '@/lib/http/errors'
 import { attributeOf } from '@/lib/reading/schema/attributes'
 import { isBeyondBand, toleranceBand } from '@/lib/science/band'
 import { ScienceError } from '@/lib/science/guard'
-import { addDays, spokenDay } from './calendar'
+import { nominalDay, spokenDay } from './calendar'
 import { counted, shownWithUnit } from './words'
 
 export type AmendedStation = { position: number; endedOn: string | null }
 export type BatchJars = { batchId: string; code: string; watch: string[]; spares: string[] }
 
-/** The day on which a new time point of a running study is due; refused where it could not be carried out. */
-export function dueOfNewTime(
+/** A new time point of a running study is refused where it could not be carried out. */
+export function refuseNewTime(
   plan: ProtocolPlan,
   { position, endedOn }: AmendedStation,
   week: number,
   study: { startedOn: string; today: string },
-): string {
+): void {
   const station = plan.stations[position]!
   const name = stationName(station, position)
-  const dueOn = addDays(study.startedOn, Math.round(week * 7))
+  const dueOn = nominalDay(study.startedOn, week)
   const fault = (sentence: string) => refuse.invalid(sentence, { week: sentence })
   if (endedOn)
     throw refuse.conflict(`${name} ended on ${spokenDay(endedOn)}. Choose a station that still runs.`)
@@ -40,7 +40,6 @@ export function dueOfNewTime(
   const near = [before(station, week), week, after(station, week)].filter((one) => one !== undefined)
   const overlapping = overlap({ timePoints: near, windowDays: station.windowDays }, name)
   if (overlapping) throw fault(overlapping)
-  return dueOn
 }
 
 function before({ timePoints }: PlannedStation, week: number): number | undefined {
@@ -67,9 +66,7 @@ export function withoutFuture(
 ): ProtocolPlan {
   return withStation(plan, position, (station) => ({
     ...station,
-    timePoints: station.timePoints.filter(
-      (week) => addDays(study.startedOn, Math.round(week * 7)) <= study.today,
-    ),
+    timePoints: station.timePoints.filter((week) => nominalDay(study.startedOn, week) <= study.today),
   }))
 }
 

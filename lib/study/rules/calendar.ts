@@ -1,27 +1,8 @@
-import { pullLabel } from '@/lib/protocol/rules/plan'
-import type { PlannedStation } from '@/lib/protocol/schema'
 import { weeksSince } from '@/lib/science/months'
 
-export type PlannedPull = {
-  timeWeeks: number
-  label: string
-  dueOn: string
-  windowFrom: string
-  windowTo: string
-}
-
-/** The pulls of one station: days are dates of the lab's calendar, so no clock change moves them. */
-export function pullsOf(station: PlannedStation, startedOn: string, endWeeks: number): PlannedPull[] {
-  return station.timePoints.map((timeWeeks) => {
-    const dueOn = addDays(startedOn, Math.round(timeWeeks * 7))
-    return {
-      timeWeeks,
-      label: pullLabel(station, timeWeeks, endWeeks),
-      dueOn,
-      windowFrom: addDays(dueOn, -station.windowDays),
-      windowTo: addDays(dueOn, station.windowDays),
-    }
-  })
+/** The day that a time point means: counted in days of the calendar, so no clock change moves it. */
+export function nominalDay(startedOn: string, timeWeeks: number): string {
+  return addDays(startedOn, Math.round(timeWeeks * 7))
 }
 
 export function addDays(day: string, days: number): string {

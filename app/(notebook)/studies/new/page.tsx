@@ -6,6 +6,7 @@ import { listInstruments } from '@/lib/instrument/queries'
 import { listProtocols } from '@/lib/protocol/queries'
 import { listStations } from '@/lib/station/queries/stations'
 import { listReleasedBatches } from '@/lib/study/queries/batches'
+import { getWorkload } from '@/lib/study/queries/workload'
 
 export const permission = 'study.write'
 export const metadata: Metadata = { title: 'Start a study' }
@@ -21,6 +22,7 @@ export default async function NewStudyPage({ searchParams }: Props) {
     stations: await listStations(db, actor),
     clients: await listClients(db, actor),
     instruments: await listInstruments(db, actor),
+    lab: await getWorkload(db, actor),
   }
   return (
     <StartStudyForm
