@@ -31,13 +31,14 @@ export function WorkloadDrawing({ workload, before, calendar }: Props) {
   const layout = workloadLayout(workload, parts, calendar, width, zero)
   const todayWeeks = (Date.parse(today) - Date.parse(monday)) / (7 * 86_400_000)
   return (
-    <div ref={ref} className="min-w-0">
+    <div ref={ref} className="min-w-0 overflow-hidden">
       <TimeRuler
         scale={layout.scale}
         startOn={monday}
         points={weeks.flatMap((_, at) => (at % (width < 600 ? 8 : 4) === 0 ? [at] : []))}
         todayWeeks={todayWeeks}
         width={width}
+        caption=""
       />
       <svg
         width={width}
@@ -126,7 +127,7 @@ function Standing({ column, shelf, isCompared }: { column: Column; shelf: number
           y={lid + 0.75}
           width={width - 1.5}
           height={Math.max(0.5, high - 0.75)}
-          fill={isCompared ? 'var(--ink)' : 'var(--cream)'}
+          fill={isCompared ? 'var(--ink)' : 'var(--ground)'}
           stroke="var(--ink)"
           strokeWidth={1.5}
         />

@@ -1,5 +1,5 @@
 import { labelPlace, type LabelGrid } from '@/lib/label/rules/grid'
-import { codeLead, fitText, labelLayout, lineLead, quietModules } from '@/lib/label/rules/layout'
+import { codeLead, fitLine, labelLayout, lineLead, quietModules } from '@/lib/label/rules/layout'
 import type { Shape, Step } from '../marks/shape'
 
 /** Side length in modules, and the dark ones as runs: from where, and how many. */
@@ -37,14 +37,15 @@ function labelShapes(grid: LabelGrid, at: { xMm: number; yMm: number }, label: L
   return [
     { kind: 'path', steps: modules(label.qr, x(square.xMm), y(square.yMm), square.sideMm), fill: 'ink' },
     words(begin + codeMm * 0.85, codeMm, label.code, true),
-    ...lines.map((line, row) =>
-      words(
+    ...lines.map((line, row) => {
+      const fitted = fitLine(line, text.widthMm, lineMm)
+      return words(
         begin + codeMm * codeLead + (row + 0.85) * lineMm * lineLead,
-        lineMm,
-        fitText(line, text.widthMm, lineMm),
+        fitted.sizeMm,
+        fitted.text,
         false,
-      ),
-    ),
+      )
+    }),
   ]
 }
 

@@ -16,7 +16,7 @@ import type { ClosedDayPull } from '@/lib/pull/queries/on-closed-days'
 import { pullKeys } from '@/lib/pull/schema'
 import { spokenDay } from '@/lib/study/rules/calendar'
 import { degrees } from '@/lib/study/rules/finding'
-import { counted, listed, withVariant } from '@/lib/study/rules/words'
+import { capital, counted, listed, withVariant } from '@/lib/study/rules/words'
 import { namedDay } from '@/lib/study/rules/working-days'
 import { workloadKey } from '@/lib/study/schema'
 
@@ -57,7 +57,7 @@ export function ClosedDayPulls({ mayMove }: { mayMove: boolean }) {
   return (
     <Section
       title="Pulls on closed days"
-      sentence={`Nothing moves by itself. A pull keeps its time point and its window; only the day on which it is planned changes.${stuck.length > 0 ? ` ${counted(stuck.length, 'pull has', 'pulls have')} no working day inside the window and can only be pulled on the day, or missed with a reason.` : ''}`}
+      sentence={`Nothing moves by itself. A pull keeps its time point and its window; only the day on which it is planned changes.${stuck.length > 0 ? ` ${capital(counted(stuck.length, 'pull has', 'pulls have'))} no working day inside the window and can only be pulled on the day, or missed with a reason.` : ''}`}
     >
       <Ledger
         caption="Planned pulls on days on which the lab does not work"
@@ -70,18 +70,20 @@ export function ClosedDayPulls({ mayMove }: { mayMove: boolean }) {
             width: '44px',
             cell: (row) =>
               row.to === null || !mayMove ? null : (
-                <Checkbox
-                  label={
-                    <span className="sr-only">{`Move ${row.studyCode}, ${row.label}, ${placeOf(row)}`}</span>
-                  }
-                  checked={!left.has(row.pullId)}
-                  onSet={(isOn) => {
-                    const next = new Set(left)
-                    if (isOn) next.delete(row.pullId)
-                    else next.add(row.pullId)
-                    setLeft(next)
-                  }}
-                />
+                <span className="-my-1.5 block">
+                  <Checkbox
+                    label={
+                      <span className="sr-only">{`Move ${row.studyCode}, ${row.label}, ${placeOf(row)}`}</span>
+                    }
+                    checked={!left.has(row.pullId)}
+                    onSet={(isOn) => {
+                      const next = new Set(left)
+                      if (isOn) next.delete(row.pullId)
+                      else next.add(row.pullId)
+                      setLeft(next)
+                    }}
+                  />
+                </span>
               ),
           },
           {

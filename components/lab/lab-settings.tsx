@@ -48,9 +48,9 @@ export function LabSettings({ today, timeZones }: { today: string; timeZones: st
         tabs={labTabs('settings', true)}
         tabsLabel="The lab"
       />
-      <div className="mt-7 grid gap-10">
+      <div className="mt-7 grid grid-cols-1 gap-10">
         <ClosedDayPulls mayMove />
-        <div className="grid gap-x-16 gap-y-10 lg:grid-cols-2">
+        <div className="grid grid-cols-1 gap-x-16 gap-y-10 lg:grid-cols-2">
           <Section
             title="Working days"
             sentence="A pull is planned on the nearest working day of its window; of two equally near ones on the later, because a jar that is read early has not stood as long as its time point says."

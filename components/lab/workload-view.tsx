@@ -8,8 +8,8 @@ import { Ledger } from '@/components/ui/ledger'
 import { Section } from '@/components/ui/section'
 import { fetcher, type ClientError } from '@/lib/http/fetcher'
 import { spokenDay } from '@/lib/study/rules/calendar'
-import { capital, counted, listed } from '@/lib/study/rules/words'
-import { namedDay } from '@/lib/study/rules/working-days'
+import { capital, counted } from '@/lib/study/rules/words'
+import { holidaysText, namedDay } from '@/lib/study/rules/working-days'
 import { fullestWeek, workloadOf, type Workload, type WorkloadWeek } from '@/lib/study/rules/workload'
 import type { LabWorkload } from '@/lib/study/queries/workload'
 import { workloadKey } from '@/lib/study/schema'
@@ -31,20 +31,18 @@ export function WorkloadView({ mayManage }: { mayManage: boolean }) {
         tabs={labTabs('workload', mayManage)}
         tabsLabel="The lab"
       />
-      <div className="mt-7 grid gap-10">
-        <div>
+      <div className="mt-7 grid grid-cols-1 gap-10">
+        <div className="min-w-0">
           <WorkloadDrawing workload={workload} calendar={data.calendar} />
           <p className="mt-2 text-14 text-soft">
             Solid: jars that are opened and measured. Hollow: watch jars that are looked at. The shelf has a
             gap on every day on which nobody is here
-            {holidays.length > 0
-              ? `, with a cross under a holiday: ${listed(holidays.slice(0, 12).map(({ day, name }) => `${name} (${namedDay(day, false)})`))}${holidays.length > 12 ? ' and more' : ''}`
-              : ''}
-            .
+            {holidays.length > 0 ? `, with a cross under a holiday: ${holidaysText(holidays)}` : ''}. The
+            ruler counts weeks from this one.
           </p>
         </div>
         <ClosedDayPulls mayMove={mayManage} />
-        <div className="grid gap-x-16 gap-y-10 lg:grid-cols-2">
+        <div className="grid gap-x-16 gap-y-10 grid-cols-1 xl:grid-cols-[3fr_2fr]">
           <Section title="Week by week">
             <Weeks workload={workload} />
           </Section>
@@ -88,7 +86,11 @@ function Weeks({ workload }: { workload: Workload }) {
       isQuiet={(week) => week.jars === 0}
       empty={<p className="text-15 text-soft">No running study asks for a jar.</p>}
       columns={[
-        { key: 'week', title: 'week', cell: (week) => weekName(week.monday, today) },
+        {
+          key: 'week',
+          title: 'week',
+          cell: (week) => <span className="whitespace-nowrap">{weekName(week.monday, today)}</span>,
+        },
         {
           key: 'jars',
           title: 'jars',
@@ -101,7 +103,7 @@ function Weeks({ workload }: { workload: Workload }) {
           ? [
               {
                 key: 'thaw',
-                title: 'of these freeze-thaw',
+                title: 'freeze-thaw',
                 align: 'right' as const,
                 from: 'tablet' as const,
                 cell: (week: WorkloadWeek) => week.byKind['freeze-thaw'] || '',
@@ -112,7 +114,7 @@ function Weeks({ workload }: { workload: Workload }) {
           ? [
               {
                 key: 'road',
-                title: 'of these transport',
+                title: 'transport',
                 align: 'right' as const,
                 from: 'tablet' as const,
                 cell: (week: WorkloadWeek) => week.byKind.transport || '',
@@ -123,7 +125,7 @@ function Weeks({ workload }: { workload: Workload }) {
           key: 'closed',
           title: 'closed',
           from: 'tablet',
-          cell: (week) => week.holidays.map(({ day, name }) => `${namedDay(day, false)}, ${name}`).join('; '),
+          cell: (week) => (week.holidays.length > 0 ? holidaysText(week.holidays) : ''),
         },
       ]}
     />

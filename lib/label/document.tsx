@@ -37,7 +37,7 @@ export async function renderLabels(labels: StudyLabels, choice: LabelChoice): Pr
     Document,
     { title: `Labels of ${labels.code}`, creator: 'Stillstand', producer: 'Stillstand', language: 'en' },
     ...sheets.map((sheet, at) => (
-      <Page key={at} size={[width, height]}>
+      <Page key={at} size={[width, height]} wrap={false}>
         <Svg width={width} height={height} viewBox={`0 0 ${width} ${height}`}>
           <PdfDrawn shapes={sheetShapes(grid, sheet)} fontFamily={textFamily} monoFamily={monoFamily} />
         </Svg>

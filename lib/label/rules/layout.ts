@@ -15,7 +15,7 @@ const largestSquareMm = 32
 /** Sheets shift in the printer: nothing stands nearer to a label's edge (common practice, no source). */
 const edgeMm = 1.5
 /** Six points, the smallest type that is read at arm's length (common practice, no source). */
-const smallestCodeMm = 2.1
+const smallestTypeMm = 2.1
 /** "−10·J4PC7" */
 const longestCode = 9
 /** Atkinson Hyperlegible Mono: the advance of every character, in parts of the type's size. */
@@ -53,10 +53,10 @@ export function labelLayout(grid: Pick<LabelGrid, 'widthMm' | 'heightMm'>): Labe
 function filled(square: LabelLayout['square'], text: LabelLayout['text']): LabelLayout | null {
   const moduleMm = square.sideMm / squareModules
   const codeMm = Math.min(text.widthMm / (longestCode * monoAdvance), text.heightMm * 0.42, 7)
-  if (moduleMm < smallestModuleMm - 1e-9 || codeMm < smallestCodeMm) return null
+  if (moduleMm < smallestModuleMm - 1e-9 || codeMm < smallestTypeMm) return null
   const room = text.heightMm - codeMm * codeLead
   // Smaller type before fewer lines, down to six points.
-  const lineMm = Math.min(3, codeMm * 0.8, Math.max(smallestCodeMm, room / (4 * lineLead)))
+  const lineMm = Math.min(3, codeMm * 0.8, Math.max(smallestTypeMm, room / (4 * lineLead)))
   return {
     square,
     moduleMm,
@@ -86,13 +86,19 @@ export function gridFaults(grid: LabelGrid): GridFault[] {
   ]
 }
 
-/** As much of a text as fits, with an ellipsis where it was longer: widths are taken a little too wide. */
-export function fitText(text: string, widthMm: number, sizeMm: number): string {
-  const room = widthMm / sizeMm
-  if (advanceOf(text) <= room) return text
+/**
+ * A line that keeps inside the label: its type is made smaller down to six points, and what is still too long ends in
+ * an ellipsis. Widths are taken a little too wide.
+ */
+export function fitLine(text: string, widthMm: number, sizeMm: number): { text: string; sizeMm: number } {
+  const natural = advanceOf(text)
+  if (natural * sizeMm <= widthMm) return { text, sizeMm }
+  const smaller = Math.max(Math.min(sizeMm, smallestTypeMm), widthMm / natural)
+  const room = widthMm / smaller
+  if (natural <= room + 1e-9) return { text, sizeMm: smaller }
   const letters = [...text]
   while (letters.length > 0 && advanceOf(`${letters.join('')}…`) > room) letters.pop()
-  return `${letters.join('').trimEnd()}…`
+  return { text: `${letters.join('').trimEnd()}…`, sizeMm: smaller }
 }
 
 /** Advances of Atkinson Hyperlegible Next, rounded up, in parts of the size; what it lacks counts as a full square. */

@@ -1,7 +1,6 @@
 import type { JarRow } from '@/lib/jar/queries'
 import { namedJar } from '@/lib/jar/rules'
 import { spokenDay } from '@/lib/study/rules/calendar'
-import { degrees } from '@/lib/study/rules/finding'
 
 type Labelled = Pick<
   JarRow,
@@ -44,16 +43,19 @@ function kindOf({ kind, setAsideFor }: Labelled): string {
   return setAsideFor ? `for ${setAsideFor}` : (kindWords[kind] ?? kind)
 }
 
-/** How the jar lies or stands, in which pack, in light or foil: whoever puts it back must know. */
+/** How the jar lies or stands, in light or foil, and in which pack: whoever puts it back must know. */
 function howOf({ variant }: Labelled, ownPack: string | null): string[] {
-  if (!variant) return []
-  const words = ownPack ? variant.replace('own pack', ownPack) : variant
-  return [words.charAt(0).toUpperCase() + words.slice(1)]
+  const parts = (variant ?? '').split(', ').filter((part) => part !== '')
+  const isOwnPack = parts.includes('own pack')
+  const light = parts.includes('wrapped in foil') ? 'in foil' : parts.includes('in light') ? 'in light' : null
+  const stands = parts.filter((part) => !['own pack', 'wrapped in foil', 'in light'].includes(part))
+  const how = [...stands, light].filter((part) => part !== null).join(', ')
+  return [how.charAt(0).toUpperCase() + how.slice(1), isOwnPack ? (ownPack ?? 'own pack') : '']
 }
 
+/** Its temperature stands before the code already. */
 function whereOf(jar: Labelled): string {
   if (jar.studyStationId === null) return jar.kind === 'retain' ? 'retain cupboard' : 'opened at the start'
   const name = jar.stationName ?? ''
-  const station = jar.temperatureC === null ? name : `${degrees(jar.temperatureC)}, ${name}`
-  return jar.shelf === null ? station : `${jar.shelf}/${jar.place}, ${station}`
+  return jar.shelf === null ? name : `${jar.shelf}/${jar.place}, ${name}`
 }

@@ -87,6 +87,23 @@ export function namedDay(day: string, withYear = true): string {
   return `${weekdays[weekdayOf(day) - 1]!.slice(0, 3)} ${spokenDay(day, withYear)}`
 }
 
+/** "Stocktaking (Wed 23 Dec), Winter closing (Thu 24 Dec to Fri 1 Jan)": days of one name, a week's end between them or not, as one. */
+export function holidaysText(holidays: { day: string; name: string }[]): string {
+  const spans: { name: string; from: string; to: string }[] = []
+  for (const { day, name } of holidays) {
+    const last = spans.at(-1)
+    if (last?.name === name && day <= addDays(last.to, 3)) last.to = day
+    else spans.push({ name, from: day, to: day })
+  }
+  return spans
+    .map(({ name, from, to }) =>
+      from === to
+        ? `${name} (${namedDay(from, false)})`
+        : `${name} (${namedDay(from, false)} to ${namedDay(to, false)})`,
+    )
+    .join(', ')
+}
+
 /** The window's days by their distance from the nominal one, the later of two first. */
 function nearest({ nominalOn, windowFrom, windowTo }: InWindow): string[] {
   const days: string[] = []
