@@ -7,7 +7,6 @@ import { keep } from '@/components/session/keep'
 import { Button } from '@/components/ui/button'
 import { ErrorNote } from '@/components/ui/error-note'
 import { NumberField } from '@/components/ui/number-field'
-import { readNumber } from '@/components/ui/read-number'
 import { Select } from '@/components/ui/select'
 import { toast } from '@/components/ui/toast'
 import { ClientError, fetcher, send } from '@/lib/http/fetcher'
@@ -15,6 +14,7 @@ import type { LabelGrid } from '@/lib/label/rules/grid'
 import { labelGrid } from '@/lib/label/schema'
 import type { Lab } from '@/lib/lab/queries'
 import { labKey } from '@/lib/lab/schema'
+import { readDecimal } from '@/lib/number/rules'
 
 const fields = [
   { key: 'columns', label: 'Beside each other', unit: '' },
@@ -39,7 +39,7 @@ export function OwnSheetForm() {
   const shown = draft ?? draftOf(lab.labelGrid)
   const read = labelGrid.safeParse(gridOf(shown))
   const faults = read.success ? [] : read.error.issues
-  const isWhole = fields.every(({ key }) => readNumber(shown[key]) !== null)
+  const isWhole = fields.every(({ key }) => readDecimal(shown[key]) !== null)
   const faultOf = (key: string) =>
     isWhole ? faults.find((issue) => issue.path[0] === key)?.message : undefined
 
@@ -129,6 +129,6 @@ function draftOf(grid: LabelGrid | null): Draft {
 function gridOf(draft: Draft) {
   return {
     paper: draft.paper,
-    ...Object.fromEntries(fields.map(({ key }) => [key, readNumber(draft[key]) ?? undefined])),
+    ...Object.fromEntries(fields.map(({ key }) => [key, readDecimal(draft[key]) ?? undefined])),
   }
 }

@@ -16,6 +16,7 @@ export type LabelledJar = {
   code: string
   state: string
   studyStationId: string | null
+  isMoved: boolean
   /** The station as a person chooses it. */
   station: string
   label: Label
@@ -44,6 +45,7 @@ export function StudyLabels({ code, jars, ownGrid, start }: Props) {
     grid,
     choice.first,
   )
+  const moved = labelledJars(jars).filter((jar) => jar.isMoved).length
   const isReady = chosen.length > 0 && !firstFault
   return (
     <>
@@ -106,6 +108,7 @@ export function StudyLabels({ code, jars, ownGrid, start }: Props) {
               options={[
                 { value: 'all', label: `All that stand, ${labelledJars(jars).length}` },
                 ...stationsOf(jars),
+                ...(moved > 0 ? [{ value: 'moved', label: `Moved to another station, ${moved}` }] : []),
                 { value: 'jars', label: 'Those I name' },
               ]}
               onPick={(of) => set({ of: of as LabelChoice['of'] })}

@@ -9,14 +9,23 @@ import type { LabelGrid } from './rules/grid'
 export async function getLabels(db: Db, actor: Actor, studyCode: string) {
   const study = await getStudyHead(db, actor, studyCode)
   const jars = await listJars(db, actor, study.id)
-  const { ownGrid } = await getOwnGrid(db)
-  return { code: study.code, title: study.title, ownPack: study.plan.ownPack ?? null, jars, ownGrid }
+  const { ownGrid, moved } = await getSheetAndMoved(db, study.id)
+  const isMoved = new Set(moved)
+  return {
+    code: study.code,
+    ownPack: study.plan.ownPack ?? null,
+    jars: jars.map((jar) => ({ ...jar, isMoved: isMoved.has(jar.id) })),
+    ownGrid,
+  }
 }
 export type StudyLabels = Awaited<ReturnType<typeof getLabels>>
 
-async function getOwnGrid(db: Db): Promise<{ ownGrid: LabelGrid | null }> {
-  const { rows } = await sql<{ ownGrid: LabelGrid | null }>`
-    select (select label_grid from lab) as "ownGrid"
+/** The lab's own sheet, and the jars whose first label names a place where they no longer stand. */
+async function getSheetAndMoved(db: Db, studyId: string) {
+  const { rows } = await sql<{ ownGrid: LabelGrid | null; moved: string[] }>`
+    select (select label_grid from lab) as "ownGrid",
+      coalesce((select jsonb_agg(distinct m.jar_id) from jar_move m join jar j on j.id = m.jar_id
+        where j.study_id = ${studyId}), '[]') as moved
   `.execute(db)
   return rows[0]!
 }

@@ -30,8 +30,8 @@ export const labelChoice = z.object({
   sheet: z.enum([ownGridKey, ...genericGrids.map((one) => one.key)]).default(genericGrids[0]!.key),
   /** The first free label of a sheet that is begun, counted along the rows. */
   first: z.coerce.number('Type a number.').int().min(1, 'Labels are counted from 1.').max(1000).default(1),
-  /** Every jar that still needs a label, those of one of the study's stations or its retains, or the jars named. */
-  of: z.union([z.enum(['all', 'retains', 'jars']), z.uuid()]).default('all'),
+  /** Every jar that still stands, those of one of the study's stations or its retains, those moved, or the jars named. */
+  of: z.union([z.enum(['all', 'retains', 'moved', 'jars']), z.uuid()]).default('all'),
   /** Codes with a comma between them, where the jars are named. */
   jars: z.string().trim().max(6000).default(''),
 })

@@ -9,13 +9,13 @@ export function labelledJars<T extends Pick<JarRow, 'state'>>(jars: T[]): T[] {
 }
 
 /** The jars whose labels are asked for; the fault says a code that is none, or of another study. */
-export function chooseJars<T extends Pick<JarRow, 'code' | 'state' | 'studyStationId'>>(
-  jars: T[],
-  { of, jars: typed }: Pick<LabelChoice, 'of' | 'jars'>,
-): { chosen: T[]; fault: string | null } {
+export function chooseJars<
+  T extends Pick<JarRow, 'code' | 'state' | 'studyStationId'> & { isMoved: boolean },
+>(jars: T[], { of, jars: typed }: Pick<LabelChoice, 'of' | 'jars'>): { chosen: T[]; fault: string | null } {
   const standing = labelledJars(jars)
   if (of === 'all') return { chosen: standing, fault: null }
   if (of === 'retains') return found(standing.filter((jar) => jar.studyStationId === null))
+  if (of === 'moved') return found(standing.filter((jar) => jar.isMoved))
   if (of !== 'jars') return found(standing.filter((jar) => jar.studyStationId === of))
   const texts = typed.split(/[\s,;]+/).filter((text) => text !== '')
   const codes = texts.map((text) => ({ text, code: readJarCode(text) }))

@@ -66,7 +66,7 @@ export async function startStudy(
       adjustments: input.adjustments,
       stations: lab,
       leavings: await listLeavings(trx),
-      today: dayIn(timeZone, now),
+      today: dayIn(calendar.timeZone, now),
     },
   )
   const initial = initialRows(plan.attributes, batches, input.initialReadings)

@@ -3,10 +3,12 @@ import type { PlannedStation, ProtocolPlan } from '@/lib/protocol/schema'
 import { fitsFrom, type Leaving } from '@/lib/station/rules/occupancy'
 import { capacityOf } from '@/lib/station/rules/places'
 import type { StudyAdjustments } from '@/lib/study/schema'
-import { addDays, pullsOf, spokenDay } from './calendar'
+import { nominalDay, spokenDay } from './calendar'
 import { plannedJars } from './jars'
+import { pullsOf } from './pulls'
 import { fittingStations, freeIn, type StationOffer } from './stations'
 import { counted, numberWord } from './words'
+import type { LabCalendar } from './working-days'
 
 /** What would let a study stand where it does not fit; one that only waits has nothing to press. */
 export type RoomOption = { kind: 'station' | 'spares' | 'batches' | 'without' | 'day'; label: string } & {
@@ -34,12 +36,11 @@ export function plannedLeavings(
   batchCount: number,
   today: string,
 ): Pick<Leaving, 'leavesOn' | 'jars'>[] {
-  const endOn = addDays(today, Math.round(plan.endWeeks * 7))
+  const endOn = nominalDay(today, plan.endWeeks)
   return plannedJars(plan, ['one']).flatMap((jar) => {
     if (jar.position === null || chosen[jar.position]?.id !== stationId) return []
     const [week] = jar.weeks
-    const leavesOn =
-      jar.kind === 'measuring' && week !== undefined ? addDays(today, Math.round(week * 7)) : endOn
+    const leavesOn = jar.kind === 'measuring' && week !== undefined ? nominalDay(today, week) : endOn
     return [{ leavesOn, jars: batchCount }]
   })
 }
@@ -149,9 +150,10 @@ export function pullsInDowntime(
   planned: PlannedStation,
   endWeeks: number,
   today: string,
+  calendar: LabCalendar,
   downtimes: { fromOn: string; toOn: string; reason: string }[],
 ): TouchedDowntime[] {
-  const pulls = pullsOf(planned, today, endWeeks)
+  const pulls = pullsOf(planned, today, endWeeks, calendar)
   return downtimes.flatMap(({ fromOn, toOn, reason }) => {
     const touched = pulls.filter(({ dueOn }) => dueOn >= fromOn && dueOn <= toOn)
     return touched.length === 0 ? [] : [{ fromOn, toOn, reason, pulls: touched.map(({ label }) => label) }]

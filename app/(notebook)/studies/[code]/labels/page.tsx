@@ -34,6 +34,7 @@ export default async function LabelsPage({ params, searchParams }: Props) {
         code: jar.code,
         state: jar.state,
         studyStationId: jar.studyStationId,
+        isMoved: jar.isMoved,
         station: stationOf(jar),
         label: labelOf(jar, ownPack),
       }))}
