@@ -3,12 +3,13 @@ import { Section } from '@/components/ui/section'
 import { percentText } from '@/lib/formula/rules/numbers'
 import { familyGrid } from '@/lib/formula/rules/variants'
 import type { Family } from '@/lib/formula/queries/list-families'
+import { MakeFamily } from './make-family'
 import { compareAddress, mostCompared } from '@/lib/formula/schema'
 
-type Props = { family: Family; code: string }
+type Props = { family: Family; code: string; mayMake: boolean }
 
 /** A family of prototypes as the grid they were varied over; the one that is open stands out in ink. */
-export function FamilyPart({ family, code }: Props) {
+export function FamilyPart({ family, code, mayMake }: Props) {
   const grid = familyGrid(family.members)
   if (!grid) return null
   const codes = [family.base.code, ...family.members.map((member) => member.code)]
@@ -35,6 +36,9 @@ export function FamilyPart({ family, code }: Props) {
               Difference to the base
             </Link>
           )}
+          {mayMake ? (
+            <MakeFamily base={family.base.code} codes={family.members.map((member) => member.code)} />
+          ) : null}
           <Link href={compareAddress(codes.slice(0, mostCompared))}>Compare where they stand</Link>
         </span>
       }

@@ -110,6 +110,7 @@ export function FormulaEditor({ formula, part, personId, mayWrite, isClient, onR
             <LinesPart
               formula={formula}
               handle={handle}
+              mayWrite={mayWrite}
               isOpen={isOpen}
               totals={totals}
               phases={phaseTotals(amounts)}
@@ -118,7 +119,7 @@ export function FormulaEditor({ formula, part, personId, mayWrite, isClient, onR
             />
           ) : null}
           {part === 'process' ? (
-            <ProcessPart {...{ handle, isOpen, steps, checks }} number={formula.number} />
+            <ProcessPart {...{ handle, isOpen, steps, checks }} code={formula.code} number={formula.number} />
           ) : null}
           {part === 'batches' ? <MadePart formula={formula} /> : null}
           {part === 'versions' ? <VersionsPart formula={formula} /> : null}

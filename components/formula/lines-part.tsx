@@ -26,6 +26,7 @@ import type { DraftHandle } from './use-draft'
 type Props = {
   formula: FormulaPage
   handle: DraftHandle
+  mayWrite: boolean
   isOpen: boolean
   totals: FormulaTotals
   phases: PhaseTotal[]
@@ -34,7 +35,7 @@ type Props = {
 }
 
 /** The jar if it all came apart, the sheet, and what is inside: the formula at a glance. */
-export function LinesPart({ formula, handle, isOpen, totals, phases, checks, before }: Props) {
+export function LinesPart({ formula, handle, mayWrite, isOpen, totals, phases, checks, before }: Props) {
   const { draft, amounts, problems, change } = handle
   const [problem, setProblem] = useState('')
   const sheet = useRef<HTMLDivElement>(null)
@@ -91,7 +92,12 @@ export function LinesPart({ formula, handle, isOpen, totals, phases, checks, bef
           )}
           <MeasuredHow type={draft.emulsionType} />
           {formula.families.map((family) => (
-            <FamilyPart key={family.members[0]?.code} family={family} code={formula.code} />
+            <FamilyPart
+              key={family.members[0]?.code}
+              family={family}
+              code={formula.code}
+              mayMake={mayWrite && !handle.isDirty}
+            />
           ))}
         </div>
       </div>

@@ -10,13 +10,14 @@ import type { DraftHandle } from './use-draft'
 
 type Props = {
   handle: DraftHandle
+  code: string
   number: number
   isOpen: boolean
   steps: FormulaStep[]
   checks: FormulaCheck[]
 }
 
-export function ProcessPart({ handle, number, isOpen, steps, checks }: Props) {
+export function ProcessPart({ handle, code, number, isOpen, steps, checks }: Props) {
   const { change } = handle
   const onSteps: ChangeSteps = useCallback(
     (next, at) => change((now) => ({ steps: next(now.steps) }), at),
@@ -26,6 +27,7 @@ export function ProcessPart({ handle, number, isOpen, steps, checks }: Props) {
     <div className="grid grid-cols-[minmax(0,1fr)] gap-x-10 gap-y-8 xl:grid-cols-[minmax(0,1fr)_300px]">
       {isOpen ? (
         <StepSheet
+          code={code}
           steps={handle.draft.steps}
           problems={handle.problems}
           onSteps={onSteps}

@@ -9,6 +9,7 @@ import { Cell } from './cell'
 import { RowActs } from './row-acts'
 import { focusCell, walkSheet } from './sheet-keys'
 import type { Problems } from './read-draft'
+import { TakeSteps } from './take-steps'
 import { UndoButtons } from './undo-buttons'
 import type { DraftHandle } from './use-draft'
 import { useRowDrag } from './use-row-drag'
@@ -16,6 +17,8 @@ import { useRowDrag } from './use-row-drag'
 export type ChangeSteps = (next: (steps: TypedStep[]) => TypedStep[], at?: string) => void
 
 type Props = {
+  /** Of the formula whose steps these are. */
+  code: string
   steps: TypedStep[]
   problems: Problems
   onSteps: ChangeSteps
@@ -33,7 +36,7 @@ const columns = [
 ] as const
 
 /** The process in order. "B into A" as the phase names the step that joins them. */
-export function StepSheet({ steps, problems, onSteps, undo }: Props) {
+export function StepSheet({ code, steps, problems, onSteps, undo }: Props) {
   const sheet = useRef<HTMLTableElement>(null)
   const onDrop = useCallback(
     (id: string, besideId: string, side: 'before' | 'after') =>
@@ -160,6 +163,7 @@ export function StepSheet({ steps, problems, onSteps, undo }: Props) {
       </div>
       <div className="mt-2 flex flex-wrap items-center gap-x-4 gap-y-2">
         <Button onClick={() => addStep()}>Add step</Button>
+        <TakeSteps code={code} onSteps={onSteps} />
         <UndoButtons undo={undo} />
         <p className="text-13 text-soft">
           Say B into A as the phase of the step that joins the two. Alt with up or down moves a step.

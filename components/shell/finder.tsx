@@ -9,7 +9,7 @@ import type { Found, FoundKind } from '@/lib/finder/queries'
 import { findKey } from '@/lib/finder/schema'
 import { fetcher } from '@/lib/http/fetcher'
 import type { Place } from './places'
-import { useSettled } from './use-settled'
+import { useSettled } from '@/components/ui/use-settled'
 
 type Entry = { key: string; word: string; code: string; name: string; href: string }
 

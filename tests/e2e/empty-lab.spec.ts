@@ -3,11 +3,13 @@ import { demoPeople } from '@/fixtures/demo/people'
 import { emptyLab, firstCode } from '../support/e2e-labs'
 import { Hand } from './hand'
 import {
+  keepBatch,
   makeBatch,
   nameFormula,
   pasteLines,
   printLabels,
   readInitial,
+  saveDraft,
   startIt,
   takeReadyMade,
   writeSteps,
@@ -160,7 +162,12 @@ test('A family of six variants goes from one base to labelled jars in under ten 
   await signIn(page)
   await nameFormula(page, hand, gelledCream)
   await pasteLines(page, hand, gelledCream)
-  await writeSteps(page, hand, gelledCream)
+  await hand.press(page.getByRole('link', { name: /^Process/ }))
+  await hand.press(page.getByRole('button', { name: 'Take steps from a formula' }))
+  await hand.type(page.getByRole('dialog').getByLabel('Find a formula'), 'W88')
+  await hand.press(page.getByRole('dialog').getByRole('radio', { name: /^W88 / }))
+  await hand.press(page.getByRole('dialog').getByRole('button', { name: 'Take its steps' }))
+  await saveDraft(page, hand)
   await hand.press(page.getByRole('link', { name: 'Vary it' }))
   await hand.choose(page.getByLabel('Vary', { exact: true }), { label: 'B  Xanthan Gum, 0.20 %' })
   await hand.type(page.getByLabel('Over the levels, % w/w'), '0,2; 0,3; 0,4')
@@ -169,6 +176,9 @@ test('A family of six variants goes from one base to labelled jars in under ten 
   await hand.press(page.getByRole('button', { name: 'Make six formulas' }))
   await expect(page).toHaveURL(/\/formulas\/G80a$/)
 
+  await hand.press(page.getByRole('button', { name: 'A batch of each' }))
+  await hand.press(page.getByRole('dialog').getByRole('button', { name: 'Make them' }))
+  await expect(page).toHaveURL(/\/batches\?q=G80$/)
   const batches: string[] = []
   for (const [index, letter] of [...'abcdef'].entries()) {
     const variant = variantOf(
@@ -177,12 +187,10 @@ test('A family of six variants goes from one base to labelled jars in under ten 
       ['0.2', '0.3', '0.4'][Math.floor(index / 2)]!,
       ['0.5', '0.9'][index % 2]!,
     )
-    if (index > 0) {
-      await hand.press(page.getByRole('link', { name: 'Formulas', exact: true }))
-      await hand.press(page.getByRole('link', { name: variant.code, exact: true }))
-    }
+    if (index > 0) await hand.press(page.getByRole('link', { name: 'Batches', exact: true }))
+    await hand.press(page.getByRole('link', { name: `${variant.code}-1`, exact: true }))
     const making = { sizeG: 2000, yieldG: 1950, typeShown: 'water-in-oil', conductivity: '0.2' }
-    batches.push(await makeBatch(page, hand, variant, making))
+    batches.push(await keepBatch(page, hand, variant, making))
   }
   await hand.press(page.getByRole('link', { name: 'Studies', exact: true }))
   await hand.press(page.getByRole('link', { name: 'Start a study' }).first())

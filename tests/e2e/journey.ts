@@ -60,7 +60,7 @@ export async function writeSteps(page: Page, hand: Hand, recipe: Recipe) {
   await saveDraft(page, hand)
 }
 
-async function saveDraft(page: Page, hand: Hand) {
+export async function saveDraft(page: Page, hand: Hand) {
   const saved = page.waitForResponse((answer) => answer.request().method() === 'PUT')
   await hand.press(page.getByRole('button', { name: 'Save the draft' }))
   expect((await saved).status()).toBe(200)
@@ -75,6 +75,11 @@ export async function makeBatch(page: Page, hand: Hand, recipe: Recipe, making: 
   await hand.type(dialog.getByLabel('Size'), String(making.sizeG))
   await hand.press(dialog.getByRole('button', { name: 'Make the batch' }))
   await expect(page).toHaveURL(new RegExp(`/batches/${recipe.code}-\\d$`))
+  return keepBatch(page, hand, recipe, making)
+}
+
+/** The batch that is open, from its first weight to its release. */
+export async function keepBatch(page: Page, hand: Hand, recipe: Recipe, making: Making): Promise<string> {
   for (const { inciName } of recipe.lines) {
     const weight = page.getByRole('textbox', { name: `Weight of ${inciName} in g` })
     await hand.type(weight, ((making.sizeG * shareOf(recipe, inciName)) / 100).toFixed(2))

@@ -95,7 +95,7 @@ export const gelledCream: Recipe = {
     ['B', 'Phenoxyethanol', 'preservative', '0.8', '1.11'],
   ]),
   internalPhase: 'B',
-  steps: coldSteps.slice(1),
+  steps: coldSteps,
 }
 
 function step(phase: string, instruction: string, rpm: string, minutes: string): Recipe['steps'][number] {
