@@ -57,7 +57,7 @@ export default async function VariantsPage({ params, searchParams }: Props) {
         taken={taken}
       />
       {formula.families.map((family) => (
-        <FamilyPart key={family.members[0]?.code} family={family} code={code} />
+        <FamilyPart key={family.members[0]?.code} family={family} code={code} mayMake />
       ))}
     </>
   )
