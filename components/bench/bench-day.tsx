@@ -8,6 +8,7 @@ import { heatLine } from '@/components/marks/heat'
 import { StationLabel } from '@/components/ui/station-label'
 import type { Bench, BenchStation } from '@/lib/bench/queries/today'
 import { dayText } from '@/lib/report/rules'
+import { periodText } from '@/lib/station/rules/downtime'
 
 type Props = { bench: Bench; outbox: Outbox; onOpen: (code: string) => void }
 
@@ -136,6 +137,11 @@ function Station({ station, isOpen, kept, onPick, onOpen }: StationProps) {
           <p className="py-2 text-17">
             {station.name}. {station.caution ? <b>{station.caution}</b> : null}
           </p>
+          {station.downtime ? (
+            <p className="pb-2 text-17">
+              Out of use {periodText(station.downtime)}: {station.downtime.reason}
+            </p>
+          ) : null}
           <ul className="flex flex-col gap-3">
             {[...open, ...station.jars.filter((j) => !open.includes(j))].map((jar) => (
               <JarRow key={jar.pullJarId} jar={jar} isKept={kept.has(jar.code)} onOpen={onOpen} />

@@ -23,6 +23,9 @@ const numbers = [
   'lowC',
   'highC',
   'humidityPercent',
+  'lightLux',
+  'lightUvWm2',
+  'lightHours',
   'cycleLowC',
   'cycleHighC',
   'walkOrder',
@@ -131,6 +134,12 @@ export function StationDialog({ station, nextOrder, onClose, onDone }: Props) {
           </>
         )}
       </div>
+      <fieldset className="flex flex-wrap items-start gap-3">
+        <legend className="mb-1 text-15 font-600">Lamps, where it has any</legend>
+        {part('lightLux', 'Light, lux')}
+        {part('lightUvWm2', 'UV light, W/m²')}
+        {part('lightHours', 'Hours a day')}
+      </fieldset>
       <div className="flex flex-wrap items-start gap-3">
         {part('shelves', 'Shelves')}
         {part('placesPerShelf', 'Places on each')}
@@ -157,6 +166,9 @@ function startOf(station: Station | null, nextOrder: number): Record<NumberKey, 
     lowC: text(station?.lowC),
     highC: text(station?.highC),
     humidityPercent: text(station?.humidityPercent),
+    lightLux: text(station?.lightLux),
+    lightUvWm2: text(station?.lightUvWm2),
+    lightHours: text(station?.lightHours),
     cycleLowC: text(station?.cycleLowC),
     cycleHighC: text(station?.cycleHighC),
     walkOrder: text(station?.walkOrder, String(nextOrder)),

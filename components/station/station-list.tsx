@@ -9,6 +9,7 @@ import { Heading } from '@/components/ui/heading'
 import { StationLabel } from '@/components/ui/station-label'
 import { heatLine } from '@/components/marks/heat'
 import type { StationRow } from '@/lib/station/queries/stations'
+import { lightText } from '@/lib/station/rules/keeps'
 import { sideOf } from '@/lib/science/temperature-log'
 import { dayIn, spokenDay } from '@/lib/study/rules/calendar'
 import { capital, numberWord } from '@/lib/study/rules/words'
@@ -106,7 +107,7 @@ export function StationList({ stations, mayWrite, mayLog, timeZone }: Props) {
                 }}
               />
               <p className="pt-1 text-13 text-soft">
-                {[limitsText(station), station.caution, station.isActive ? '' : 'out of use']
+                {[conditionsText(station), station.caution, station.isActive ? '' : 'out of use']
                   .filter(Boolean)
                   .join('. ')}
               </p>
@@ -142,11 +143,31 @@ function LastRead({ station, timeZone }: { station: StationRow; timeZone: string
   )
 }
 
-export function limitsText(station: {
+export function conditionsText(station: {
   kind: string
   lowC: number | null
   highC: number | null
   humidityPercent: number | null
+  cycleLowC: number | null
+  cycleHighC: number | null
+  lightLux: number | null
+  lightUvWm2: number | null
+  lightHours: number | null
+}): string {
+  const light = lightText(station)
+  return [
+    limitsText(station),
+    station.humidityPercent === null ? null : `${station.humidityPercent} % humidity`,
+    light === null ? null : `lamps: ${light}`,
+  ]
+    .filter((part) => part !== null)
+    .join(', ')
+}
+
+function limitsText(station: {
+  kind: string
+  lowC: number | null
+  highC: number | null
   cycleLowC: number | null
   cycleHighC: number | null
 }): string {
@@ -154,13 +175,11 @@ export function limitsText(station: {
   if (station.kind === 'freeze-thaw' && station.cycleLowC !== null && station.cycleHighC !== null) {
     return `Cycles from ${shown(station.cycleLowC)} to ${shown(station.cycleHighC)} °C`
   }
-  const limits =
-    station.lowC !== null && station.highC !== null
-      ? `${shown(station.lowC)} to ${shown(station.highC)} °C`
-      : station.highC !== null
-        ? `at most ${shown(station.highC)} °C`
-        : station.lowC !== null
-          ? `at least ${shown(station.lowC)} °C`
-          : 'No limits'
-  return station.humidityPercent === null ? limits : `${limits}, ${station.humidityPercent} % humidity`
+  return station.lowC !== null && station.highC !== null
+    ? `${shown(station.lowC)} to ${shown(station.highC)} °C`
+    : station.highC !== null
+      ? `at most ${shown(station.highC)} °C`
+      : station.lowC !== null
+        ? `at least ${shown(station.lowC)} °C`
+        : 'No limits'
 }

@@ -10,32 +10,63 @@ import { Heading } from '@/components/ui/heading'
 import { Ledger } from '@/components/ui/ledger'
 import { Section } from '@/components/ui/section'
 import type { stationRecord } from '@/lib/station/queries/record'
-import type { StationPage } from '@/lib/station/queries/stations'
+import type { Downtime, TouchedPull } from '@/lib/station/queries/downtimes'
+import type { MoveRow } from '@/lib/station/queries/moves'
+import type { StandingJar } from '@/lib/station/queries/places'
+import type { StationPage, StationRow } from '@/lib/station/queries/stations'
+import { periodText, touches } from '@/lib/station/rules/downtime'
+import type { SeriesPlace } from '@/lib/station/rules/moves'
+import type { Leaving } from '@/lib/station/rules/occupancy'
+import { capacityOf } from '@/lib/station/rules/places'
 import { dayIn, spokenDay } from '@/lib/study/rules/calendar'
 import { capital, counted } from '@/lib/study/rules/words'
 import { StationDialog } from './station-dialog'
 import { excursionFacts, recordFacts } from './station-facts'
-import { limitsText } from './station-list'
+import { conditionsText } from './station-list'
+import { DowntimePart } from './downtime-part'
+import { MovesPart } from './moves-part'
+import { OccupancyPart } from './occupancy-part'
+import { ShelfRoom } from './shelf-room'
 import { TemperatureDialog } from './temperature-dialog'
 import { TemperaturePlot } from './temperature-plot'
 
 type Record = Awaited<ReturnType<typeof stationRecord>>
-type Props = { station: StationPage; record: Record; timeZone: string; mayWrite: boolean; mayLog: boolean }
+type Props = {
+  station: StationPage
+  record: Record
+  /** What stands here, what is planned, and where jars could go. */
+  room: {
+    jars: StandingJar[]
+    seriesPlaces: SeriesPlace[]
+    stations: StationRow[]
+    leavings: Leaving[]
+    downtimes: Downtime[]
+    pulls: TouchedPull[]
+    moves: MoveRow[]
+    today: string
+  }
+  timeZone: string
+  mayWrite: boolean
+  mayLog: boolean
+  mayMove: boolean
+}
 
 /** One station: its temperature record, its excursions, and whose jars stand there. */
-export function StationView({ station, record, timeZone, mayWrite, mayLog }: Props) {
+export function StationView({ station, record, room, timeZone, mayWrite, mayLog, mayMove }: Props) {
   const router = useRouter()
   const [open, setOpen] = useState<'change' | 'log' | null>(null)
   const { excursions } = record
   const refresh = () => router.refresh()
   const close = () => setOpen(null)
   const moment = (instant: string) => momentIn(timeZone, instant)
+  const down = room.downtimes.find((one) => one.cancelledAt === null && touches(one, room.today))
+  const row = room.stations.find((one) => one.id === station.id)
   return (
     <>
       <Heading
         crumb={
           <>
-            <Link href="/stations">Stations</Link>, {station.name}, {limitsText(station)}
+            <Link href="/stations">Stations</Link>, {station.name}, {conditionsText(station)}
           </>
         }
         headline={<Headline record={record} name={capital(station.name)} />}
@@ -51,7 +82,35 @@ export function StationView({ station, record, timeZone, mayWrite, mayLog }: Pro
           </>
         }
       />
+      {down ? (
+        <p className="mt-2 font-650">
+          Out of use {periodText(down)}: {down.reason}
+        </p>
+      ) : null}
       <div className="mt-6 grid gap-8">
+        {row ? (
+          <ShelfRoom
+            station={row}
+            jars={room.jars}
+            seriesPlaces={room.seriesPlaces}
+            stations={room.stations}
+            mayMove={mayMove}
+            onMoved={refresh}
+          />
+        ) : null}
+        {room.leavings.length > 0 ? (
+          <OccupancyPart capacity={capacityOf(station)} leavings={room.leavings} today={room.today} />
+        ) : null}
+        <DowntimePart
+          station={station}
+          downtimes={room.downtimes}
+          pulls={room.pulls}
+          leavings={room.leavings}
+          today={room.today}
+          mayWrite={mayWrite}
+          onDone={refresh}
+        />
+        <MovesPart moves={room.moves} moment={moment} />
         <Section title="Temperature" sentence="The last 180 days. Outside the limits is washed.">
           {record.log.length === 0 ? (
             <Empty title="No temperature is logged yet" sentence="Typed by a technician, or from a logger." />

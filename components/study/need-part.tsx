@@ -2,7 +2,8 @@
 
 import { RadioGroup } from '@/components/ui/radio-group'
 import { Section } from '@/components/ui/section'
-import type { FitOption } from '@/lib/study/rules/plan'
+import { placeAdjustments, type FitOption } from '@/lib/study/rules/plan'
+import type { StudyAdjustments } from '@/lib/study/schema'
 import { grouped } from '@/lib/number/rules'
 import { JarNeed } from './jar-need'
 import type { Draft, Need } from './start-state'
@@ -17,9 +18,7 @@ export function NeedPart({
   draft: Draft
   set: (change: Partial<Draft>) => void
 }) {
-  const picked = need.options.find(
-    (option) => JSON.stringify(option.adjustments) === JSON.stringify(draft.adjustments),
-  )
+  const picked = need.options.find((option) => isSameFill(option.adjustments, draft.adjustments))
   return (
     <Section title={`Jars of ${need.batch.code}`}>
       <JarNeed need={need} />
@@ -30,7 +29,11 @@ export function NeedPart({
             layout="ledger"
             value={picked?.kind ?? 'plan'}
             onPick={(kind) =>
-              set({ adjustments: need.options.find((option) => option.kind === kind)?.adjustments ?? {} })
+              set({
+                adjustments:
+                  need.options.find((option) => option.kind === kind)?.adjustments ??
+                  placeAdjustments(draft.adjustments),
+              })
             }
             options={[
               { value: 'plan', label: 'As the protocol says' },
@@ -45,6 +48,13 @@ export function NeedPart({
       ) : null}
     </Section>
   )
+}
+
+/** Which stations start is chosen elsewhere; here it is about grams alone. */
+function isSameFill(one: StudyAdjustments, other: StudyAdjustments): boolean {
+  const fill = ({ fillG, leaveOutWeeks, leaveOutRetains }: StudyAdjustments) =>
+    JSON.stringify([fillG, leaveOutWeeks, leaveOutRetains])
+  return fill(one) === fill(other)
 }
 
 function fitText({ jars, grams, leftG }: FitOption) {

@@ -1,13 +1,21 @@
 import { readDecimal } from '@/lib/number/rules'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
-import { jarsOfPlan } from '@/lib/protocol/rules/plan'
+import { jarsAtStation, jarsOfPlan, stationName } from '@/lib/protocol/rules/plan'
 import type { ProtocolRow } from '@/lib/protocol/queries'
 import { startsAtZero } from '@/lib/reading/schema/attributes'
 import { jarsFromGrams } from '@/lib/science/jar-grams'
 import type { ReleasedBatch } from '@/lib/study/queries/batches'
 import type { LabWorkload } from '@/lib/study/queries/workload'
-import { adjustedPlan, waysToFit } from '@/lib/study/rules/plan'
-import { chosenStations } from '@/lib/study/rules/stations'
+import { occupancy, type Leaving } from '@/lib/station/rules/occupancy'
+import {
+  adjustedPlan,
+  placeAdjustments,
+  startedChoices,
+  startedPositions,
+  waysToFit,
+} from '@/lib/study/rules/plan'
+import { placesNeeded, plannedLeavings, pullsInDowntime, waysToStand } from '@/lib/study/rules/room'
+import { chosenStations, fittingStations, freeIn } from '@/lib/study/rules/stations'
 import type { StationRow } from '@/lib/station/queries/stations'
 import type { StartStudy, StudyAdjustments } from '@/lib/study/schema'
 
@@ -15,6 +23,9 @@ export type Offer = {
   batches: ReleasedBatch[]
   protocols: ProtocolRow[]
   stations: StationRow[]
+  /** Who leaves which station when, and when stations are out of use. */
+  leavings: Leaving[]
+  downtimes: { stationId: string; fromOn: string; toOn: string; reason: string }[]
   clients: { id: string; name: string }[]
   instruments: { id: string; code: string; name: string; kind: string; isActive: boolean }[]
   /** Its days, and what running studies ask of it already. */
@@ -25,8 +36,10 @@ export type Draft = {
   title: string
   batchIds: string[]
   protocolVersionId: string
+  /** By the station's position in the protocol. */
   stationIds: Record<number, string>
   adjustments: StudyAdjustments
+  whyInPart: string
   clientId: string
   isShared: boolean
   /** By batch and attribute: one text a replicate. */
@@ -41,6 +54,7 @@ export const emptyDraft: Draft = {
   protocolVersionId: '',
   stationIds: {},
   adjustments: {},
+  whyInPart: '',
   clientId: '',
   isShared: false,
   typed: {},
@@ -49,21 +63,23 @@ export const emptyDraft: Draft = {
 }
 
 export function planOf(offer: Offer, draft: Draft): ProtocolPlan | null {
-  const protocol = offer.protocols.find((one) => one.versionId === draft.protocolVersionId)
+  const protocol = protocolOf(offer, draft)
   return protocol ? adjustedPlan(protocol.plan, draft.adjustments) : null
 }
 
 /** Jars and grams of each chosen batch, and what would fit where one is short. */
 export function needsOf(offer: Offer, draft: Draft) {
-  const protocol = offer.protocols.find((one) => one.versionId === draft.protocolVersionId)
+  const protocol = protocolOf(offer, draft)
   if (!protocol) return []
   const plan = adjustedPlan(protocol.plan, draft.adjustments)
+  const places = placeAdjustments(draft.adjustments)
+  const asPlanned = adjustedPlan(protocol.plan, places)
   return draft.batchIds.flatMap((id) => {
     const batch = offer.batches.find((one) => one.id === id)
     if (!batch) return []
     const leftG = Math.max(0.001, (batch.yieldG ?? 0) - batch.takenG)
     const need = jarsOfPlan(plan, leftG)
-    const isShortAsPlanned = !jarsOfPlan(protocol.plan, leftG).fits
+    const isShortAsPlanned = !jarsOfPlan(asPlanned, leftG).fits
     return [
       {
         batch,
@@ -71,20 +87,93 @@ export function needsOf(offer: Offer, draft: Draft) {
         plan,
         ...need,
         enoughFor: jarsFromGrams(leftG, plan.fillG, plan.lossPercent),
-        options: isShortAsPlanned ? waysToFit(protocol.plan, leftG) : [],
+        options: isShortAsPlanned
+          ? waysToFit(asPlanned, leftG).map((way) => ({
+              ...way,
+              adjustments: { ...places, ...way.adjustments },
+            }))
+          : [],
       },
     ]
   })
 }
 export type Need = ReturnType<typeof needsOf>[number]
 
-export function stationsOf(offer: Offer, draft: Draft, plan: ProtocolPlan) {
+function protocolOf(offer: Offer, draft: Draft): ProtocolRow | undefined {
+  return offer.protocols.find((one) => one.versionId === draft.protocolVersionId)
+}
+
+/** The lab's station for each that starts, in the order of the study's own plan. */
+function stationsOf(offer: Offer, draft: Draft, protocol: ProtocolRow, plan: ProtocolPlan) {
   const choices = Object.entries(draft.stationIds).map(([position, stationId]) => ({
     position: Number(position),
     stationId,
   }))
-  return chosenStations(plan.stations, offer.stations, choices)
+  return chosenStations(
+    plan.stations,
+    offer.stations,
+    startedChoices(protocol.plan, draft.adjustments, choices),
+  )
 }
+
+/** Each station of the protocol: where it would stand, whether there is room, and what would make some. */
+export function placesOf(offer: Offer, draft: Draft) {
+  const protocol = protocolOf(offer, draft)
+  if (!protocol) return []
+  const plan = adjustedPlan(protocol.plan, draft.adjustments)
+  const started = startedPositions(protocol.plan, draft.adjustments)
+  const chosen = stationsOf(offer, draft, protocol, plan)
+  const batchCount = Math.max(1, draft.batchIds.length)
+  const { leavings } = offer
+  const { today, calendar } = offer.lab
+  return protocol.plan.stations.map((asked, protocolPosition) => {
+    const position = started.indexOf(protocolPosition)
+    const planned = plan.stations[position] ?? asked
+    const station = position === -1 ? null : (chosen[position] ?? null)
+    const own = leavings.filter((one) => one.stationId === station?.id)
+    const needed = station
+      ? placesNeeded(plan, chosen, station.id, batchCount)
+      : jarsAtStation(plan, planned) * batchCount
+    const isFull = station !== null && freeIn(station) < needed
+    return {
+      protocolPosition,
+      planned,
+      name: stationName(planned, protocolPosition),
+      isStarted: position !== -1,
+      station,
+      fitting: fittingStations(planned, offer.stations),
+      needed,
+      isFull,
+      options: isFull
+        ? waysToStand(
+            plan,
+            draft.adjustments,
+            { position, protocolPosition },
+            chosen,
+            offer.stations,
+            batchCount,
+            leavings,
+            today,
+          )
+        : [],
+      before: occupancy(today, own),
+      after: occupancy(
+        today,
+        station ? [...own, ...plannedLeavings(plan, chosen, station.id, batchCount, today)] : own,
+      ),
+      downtimes: station
+        ? pullsInDowntime(
+            planned,
+            plan.endWeeks,
+            today,
+            calendar,
+            offer.downtimes.filter((one) => one.stationId === station.id),
+          )
+        : [],
+    }
+  })
+}
+export type StartPlace = ReturnType<typeof placesOf>[number]
 
 /** Attributes whose initial is typed: where the band is told from it, or it is not nothing by definition. */
 export function initialAttributes(plan: ProtocolPlan) {
@@ -99,18 +188,17 @@ export function typedKey(batchId: string, attribute: string): string {
 
 export function bodyOf(id: string, offer: Offer, draft: Draft): StartStudy {
   const plan = planOf(offer, draft)
-  const protocol = offer.protocols.find((one) => one.versionId === draft.protocolVersionId)
+  const protocol = protocolOf(offer, draft)
   return {
     id,
     title: draft.title.trim() || protocol?.name || '',
     protocolVersionId: draft.protocolVersionId,
     batchIds: draft.batchIds,
-    stationChoices: plan
-      ? stationsOf(offer, draft, plan).flatMap((station, position) =>
-          station ? [{ position, stationId: station.id }] : [],
-        )
-      : [],
+    stationChoices: placesOf(offer, draft).flatMap(({ station, protocolPosition }) =>
+      station ? [{ position: protocolPosition, stationId: station.id }] : [],
+    ),
     adjustments: draft.adjustments,
+    whyInPart: draft.whyInPart,
     clientId: draft.clientId || null,
     isShared: draft.clientId !== '' && draft.isShared,
     initialReadings: plan
@@ -142,7 +230,13 @@ export function whyNot(offer: Offer, draft: Draft): string | undefined {
   if (!plan) return 'Choose a protocol.'
   const short = needsOf(offer, draft).find((need) => !need.fits)
   if (short) return `${Math.ceil(short.shortG)} g short.`
-  if (stationsOf(offer, draft, plan).includes(null)) return 'A station is missing.'
+  const places = placesOf(offer, draft)
+  if (places.some((place) => place.isStarted && place.station === null)) return 'A station is missing.'
+  const full = places.find((place) => place.isFull)
+  if (full?.station) return `${full.station.name} has not enough places.`
+  if (places.every((place) => !place.isStarted)) return 'No station starts.'
+  if (places.some((place) => !place.isStarted) && draft.whyInPart.trim() === '')
+    return 'Say why it starts in part.'
   const missing = draft.batchIds.some((batchId) =>
     initialAttributes(plan).some(
       ({ attribute }) =>

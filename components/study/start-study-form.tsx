@@ -15,13 +15,27 @@ import { toast } from '@/components/ui/toast'
 import { TakeReadyMade } from '@/components/protocol/take-ready-made'
 import { newId } from '@/lib/db/id'
 import { ClientError, send } from '@/lib/http/fetcher'
+import { placeAdjustments } from '@/lib/study/rules/plan'
+import { freeIn } from '@/lib/study/rules/stations'
+import { counted } from '@/lib/study/rules/words'
 import { studyKeys } from '@/lib/study/schema'
 import { grouped } from '@/lib/number/rules'
 import { InitialFields } from './initial-fields'
 import { NeedPart } from './need-part'
 import { StartCalendar } from './start-calendar'
 import { StationChoices } from './station-choices'
-import { bodyOf, emptyDraft, needsOf, planOf, whyNot, type Draft, type Need, type Offer } from './start-state'
+import {
+  bodyOf,
+  emptyDraft,
+  needsOf,
+  placesOf,
+  planOf,
+  whyNot,
+  type Draft,
+  type Need,
+  type Offer,
+  type StartPlace,
+} from './start-state'
 
 type Props = { offer: Offer; batchCode: string | null; protocolCode: string | null }
 
@@ -40,6 +54,7 @@ export function StartStudyForm({ offer, batchCode, protocolCode }: Props) {
   const plan = planOf(offer, draft)
   const needs = needsOf(offer, draft)
   const short = needs.find((need) => !need.fits)
+  const full = placesOf(offer, draft).find((place) => place.isFull)
   const fields = error instanceof ClientError ? error.fields : {}
   const chosen = offer.protocols.find((one) => one.versionId === draft.protocolVersionId)
   const isUnapproved = chosen !== undefined && chosen.state !== 'approved'
@@ -81,7 +96,7 @@ export function StartStudyForm({ offer, batchCode, protocolCode }: Props) {
     <>
       <Heading
         crumb="Studies, a new one"
-        headline={<Headline needs={needs} short={short} />}
+        headline={<Headline needs={needs} short={short} full={full} />}
         sentence="Starting makes the jars, their labels, their places and the calendar of pulls."
       />
       <div className="mt-6 grid gap-x-12 gap-y-8 xl:grid-cols-[minmax(0,1fr)_minmax(0,1fr)]">
@@ -140,7 +155,7 @@ export function StartStudyForm({ offer, batchCode, protocolCode }: Props) {
               </div>
             </div>
           </Section>
-          {plan ? <StationChoices offer={offer} draft={draft} plan={plan} set={set} /> : null}
+          {plan ? <StationChoices offer={offer} draft={draft} set={set} fields={fields} /> : null}
           {plan ? <StartCalendar plan={plan} batchCount={draft.batchIds.length} lab={offer.lab} /> : null}
         </div>
         <div className="grid content-start gap-8">
@@ -164,11 +179,28 @@ export function StartStudyForm({ offer, batchCode, protocolCode }: Props) {
   )
 }
 
-function Headline({ needs, short }: { needs: Need[]; short: Need | undefined }) {
+function Headline({
+  needs,
+  short,
+  full,
+}: {
+  needs: Need[]
+  short: Need | undefined
+  full: StartPlace | undefined
+}) {
   if (short) {
     return (
       <>
         <b>{grouped(Math.ceil(short.shortG), 0)} g</b> are missing, so this study cannot start
+      </>
+    )
+  }
+  if (full?.station && needs.length > 0) {
+    const missing = full.needed - freeIn(full.station)
+    return (
+      <>
+        <b>{counted(missing, 'place')}</b> {missing === 1 ? 'is' : 'are'} missing at {full.station.name}, so
+        this study cannot start as it is
       </>
     )
   }
@@ -205,7 +237,7 @@ function BatchChoice({
               checked={draft.batchIds.includes(batch.id)}
               onChange={(event) =>
                 set({
-                  adjustments: {},
+                  adjustments: placeAdjustments(draft.adjustments),
                   clientId: draft.clientId || batch.clientId || '',
                   batchIds: event.target.checked
                     ? [...draft.batchIds, batch.id]

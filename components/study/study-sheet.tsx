@@ -16,7 +16,7 @@ import { SeriesDetails } from './series-details'
 import { sheetProps, stripOf } from './sheet-props'
 import { StudyActs } from './study-acts'
 import { StudyHeading, type StudyRights } from './study-heading'
-import { Amendments, StudyNotices } from './study-notices'
+import { Amendments, Moves, StudyNotices } from './study-notices'
 
 type Picked = { rowId: string; weeks: number }
 
@@ -83,6 +83,7 @@ export function StudySheet({
         <Strip sheet={sheet} batchId={shown.id} shelf={shelf} weeks={selected.weeks} />
       ) : null}
       <Amendments study={study} />
+      <Moves study={study} />
     </>
   )
 }

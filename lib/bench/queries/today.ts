@@ -122,6 +122,17 @@ async function listWalk(db: Db, today: string) {
       'coming.nextOn',
       'coming.nextCount',
     ])
+    .select(
+      sql<{
+        fromOn: string
+        toOn: string
+        reason: string
+      } | null>`(select jsonb_build_object('fromOn', d.from_on,
+          'toOn', d.to_on, 'reason', d.reason) from station_downtime d
+        where d.station_id = station.id and d.to_on >= ${today}::date and d.from_on <= ${today}::date + 7
+          and not exists (select from station_downtime_cancel c where c.station_downtime_id = d.id)
+        order by d.from_on limit 1)`.as('downtime'),
+    )
     .where('station.isActive', '=', true)
     .orderBy('station.walkOrder')
     .orderBy('station.name')

@@ -1,4 +1,4 @@
-import { spokenDay } from '@/lib/study/rules/calendar'
+import { addDays, spokenDay } from '@/lib/study/rules/calendar'
 import { capital, counted, listed } from '@/lib/study/rules/words'
 
 /** Jars of a study that leave a station on one day: opened at a pull, or put away when the study ends. */
@@ -16,10 +16,16 @@ export function occupancy(today: string, leavings: readonly Leaves[]): Occupancy
   const steps: OccupancyStep[] = [{ on: today, taken: leavings.reduce((sum, one) => sum + one.jars, 0) }]
   for (const { leavesOn, jars } of inOrder(today, leavings)) {
     const last = steps.at(-1)!
-    if (last.on === leavesOn) last.taken -= jars
-    else steps.push({ on: leavesOn, taken: last.taken - jars })
+    const on = freeOn(leavesOn)
+    if (last.on === on) last.taken -= jars
+    else steps.push({ on, taken: last.taken - jars })
   }
   return steps
+}
+
+/** On the day of its pull a jar still stands there when the lab opens. */
+export function freeOn(leavesOn: string): string {
+  return addDays(leavesOn, 1)
 }
 
 /** The first day on which so many places are free; null where no plan frees them. */

@@ -5,7 +5,6 @@ import { newId } from '@/lib/db/id'
 import { calendarOfLab } from '@/lib/holiday/queries'
 import { refuse } from '@/lib/http/errors'
 import { findProtocolVersion } from '@/lib/protocol/queries'
-import type { ProtocolPlan } from '@/lib/protocol/schema'
 import { recomputeSeries } from '@/lib/series/commands'
 import { holdPlaces } from '@/lib/station/commands/hold-places'
 import { listLeavings } from '@/lib/station/queries/places'
@@ -23,7 +22,7 @@ import { listBatchesForStart } from '@/lib/study/queries/batches'
 import { dayIn } from '@/lib/study/rules/calendar'
 import { initialRows, type InitialRow } from '@/lib/study/rules/initial'
 import { notStarted, refuseInPart } from '@/lib/study/rules/in-part'
-import { adjustedPlan, startedPositions } from '@/lib/study/rules/plan'
+import { adjustedPlan, startedChoices } from '@/lib/study/rules/plan'
 import { refuseBatch, refusePlan, refuseShortBatch, refuseStations } from '@/lib/study/rules/refusals'
 import { chosenStations } from '@/lib/study/rules/stations'
 import type { LabCalendar } from '@/lib/study/rules/working-days'
@@ -59,7 +58,7 @@ export async function startStudy(
   const lab = await listStations(trx, actor)
   const stations = refuseStations(
     plan,
-    chosenStations(plan.stations, lab, choicesOf(version.plan, input)),
+    chosenStations(plan.stations, lab, startedChoices(version.plan, input.adjustments, input.stationChoices)),
     batches.length,
     {
       protocolPlan: version.plan,
@@ -127,15 +126,6 @@ export async function startStudy(
     .execute()
   await recomputeSeries(trx, actor, input.id)
   return { id: input.id, code, jars: jars.length }
-}
-
-/** Choices name stations by their position in the protocol; the study's own plan holds those that start. */
-function choicesOf(plan: ProtocolPlan, { adjustments, stationChoices }: StartedStudy) {
-  const started = startedPositions(plan, adjustments)
-  return stationChoices.flatMap(({ position, stationId }) => {
-    const at = started.indexOf(position)
-    return at === -1 ? [] : [{ position: at, stationId }]
-  })
 }
 
 /**

@@ -1,5 +1,6 @@
 import type { Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
+import { stationName } from '@/lib/protocol/rules/plan'
 import { separationDetectionLimit } from '@/lib/science/separation'
 import { cellsOf, worstOf } from '@/lib/study/rules/cells'
 import { weeksBetween } from '@/lib/study/rules/calendar'
@@ -81,7 +82,12 @@ function leaving(separation: SeriesRow | undefined) {
 
 /** What a page shows of its study; the plan stays on the server. */
 export function headOf({ plan, ...study }: StudyHead) {
-  return { ...study, fillHeightMm: plan.fillHeightMm, attributes: plan.attributes }
+  return {
+    ...study,
+    fillHeightMm: plan.fillHeightMm,
+    attributes: plan.attributes,
+    stationNames: plan.stations.map(stationName),
+  }
 }
 export type ShownStudy = ReturnType<typeof headOf>
 

@@ -41,6 +41,24 @@ export function startedPositions(plan: ProtocolPlan, { leaveOutStations = [] }: 
   return plan.stations.map((_, position) => position).filter((one) => !leaveOutStations.includes(one))
 }
 
+/** Stations are named by their position in the protocol; the study's own plan holds those that start. */
+export function startedChoices(
+  plan: ProtocolPlan,
+  adjustments: StudyAdjustments,
+  choices: { position: number; stationId: string }[],
+): { position: number; stationId: string }[] {
+  const started = startedPositions(plan, adjustments)
+  return choices.flatMap(({ position, stationId }) => {
+    const at = started.indexOf(position)
+    return at === -1 ? [] : [{ position: at, stationId }]
+  })
+}
+
+/** What of the adjustments is about places; the rest is about grams. */
+export function placeAdjustments({ leaveOutStations, spares }: StudyAdjustments): StudyAdjustments {
+  return { ...(leaveOutStations ? { leaveOutStations } : {}), ...(spares ? { spares } : {}) }
+}
+
 /** What would make a study fit a batch: less in each jar, fewer early weeks, no retains. */
 export function waysToFit(plan: ProtocolPlan, batchG: number): FitOption[] {
   const options = [lessFill(plan, batchG), fewerWeeks(plan, batchG), withoutRetains(plan)]

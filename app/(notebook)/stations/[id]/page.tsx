@@ -5,7 +5,11 @@ import { may } from '@/lib/auth/permissions'
 import { page } from '@/lib/http/page'
 import { getLab } from '@/lib/lab/queries'
 import { stationRecord } from '@/lib/station/queries/record'
-import { getStation } from '@/lib/station/queries/stations'
+import { listComingPulls, listDowntimes } from '@/lib/station/queries/downtimes'
+import { listMoves } from '@/lib/station/queries/moves'
+import { listLeavings, listSeriesPlaces, listStandingJars } from '@/lib/station/queries/places'
+import { getStation, listStations } from '@/lib/station/queries/stations'
+import { dayIn } from '@/lib/study/rules/calendar'
 import { stationAddress } from '@/lib/station/schema'
 import { found } from '../../studies/found'
 
@@ -24,13 +28,27 @@ export default async function StationPage({ params }: Props) {
   const from = new Date(Date.parse(now) - shownDays * 86_400_000).toISOString()
   const record = await stationRecord(db, station.id, from, now)
   const lab = await getLab(db)
+  const today = dayIn(lab.timeZone, now)
+  const leavings = await listLeavings(db)
+  const room = {
+    jars: await listStandingJars(db, station.id),
+    seriesPlaces: await listSeriesPlaces(db, station.id),
+    stations: await listStations(db, actor),
+    leavings: leavings.filter((one) => one.stationId === station.id),
+    downtimes: await listDowntimes(db, station.id, today),
+    pulls: await listComingPulls(db, station.id),
+    moves: await listMoves(db, station.id),
+    today,
+  }
   return (
     <StationView
       station={station}
       record={record}
+      room={room}
       timeZone={lab.timeZone}
       mayWrite={may(actor, 'station.write')}
       mayLog={may(actor, 'station.log')}
+      mayMove={may(actor, 'jar.move')}
     />
   )
 }

@@ -4,6 +4,8 @@ import { listClients } from '@/lib/client/queries'
 import { page } from '@/lib/http/page'
 import { listInstruments } from '@/lib/instrument/queries'
 import { listProtocols } from '@/lib/protocol/queries'
+import { listComingDowntimes } from '@/lib/station/queries/downtimes'
+import { listLeavings } from '@/lib/station/queries/places'
 import { listStations } from '@/lib/station/queries/stations'
 import { listReleasedBatches } from '@/lib/study/queries/batches'
 import { getWorkload } from '@/lib/study/queries/workload'
@@ -16,13 +18,16 @@ type Props = { searchParams: Promise<Record<string, string | string[] | undefine
 export default async function NewStudyPage({ searchParams }: Props) {
   const { actor, db } = await page(permission)
   const { batch, protocol } = await searchParams
+  const lab = await getWorkload(db, actor)
   const offer = {
     batches: await listReleasedBatches(db),
     protocols: await listProtocols(db, actor),
     stations: await listStations(db, actor),
+    leavings: await listLeavings(db),
+    downtimes: await listComingDowntimes(db, lab.today),
     clients: await listClients(db, actor),
     instruments: await listInstruments(db, actor),
-    lab: await getWorkload(db, actor),
+    lab,
   }
   return (
     <StartStudyForm
