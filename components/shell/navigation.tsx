@@ -26,7 +26,7 @@ export function Navigation({
     <nav
       ref={list}
       aria-label="Notebook"
-      className={`relative flex ${places.length > 11 ? 'gap-x-3.5' : 'gap-x-[22px]'} overflow-x-auto text-15 [scrollbar-width:none] ${className ?? ''}`}
+      className={`relative flex ${places.length > 12 ? 'gap-x-2.5' : places.length > 11 ? 'gap-x-3.5' : 'gap-x-[22px]'} overflow-x-auto text-15 [scrollbar-width:none] ${className ?? ''}`}
     >
       {places.map((place) => {
         const isHere = isAt(path, place)

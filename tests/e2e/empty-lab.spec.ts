@@ -149,7 +149,7 @@ for (const { title, recipe, emulsion, inside, typeShown, conductivity, ph, torqu
     await expect(page.getByRole('heading', { level: 1 })).toHaveText(`${jarsOfScreen} jars will stand`)
     await readInitial(page, hand, [{ batch, ph, torque }])
     await startIt(page, hand, `${recipe.name}, screen`)
-    await expect(await printLabels(page, hand)).toHaveCount(labelsOfScreen)
+    expect(new Set(await printLabels(page, hand)).size).toBe(labelsOfScreen)
     expect(hand.seconds, 'seconds of an experienced hand').toBeLessThan(tenMinutes)
   })
 }
@@ -204,7 +204,7 @@ test('A family of six variants goes from one base to labelled jars in under ten 
     batches.map((batch, index) => ({ batch, ph: `5.3${index}`, torque: `6${index}` })),
   )
   await startIt(page, hand, 'Gelled cream, family of six')
-  await expect(await printLabels(page, hand)).toHaveCount(6 * labelsOfScreen)
+  expect(new Set(await printLabels(page, hand)).size).toBe(6 * labelsOfScreen)
   console.log(`a family of six: ${Math.round(hand.seconds)} s of a hand`)
   expect(hand.seconds, 'seconds of an experienced hand').toBeLessThan(tenMinutes)
 })

@@ -1,4 +1,4 @@
-import type { Locator, Page } from '@playwright/test'
+import type { Page } from '@playwright/test'
 import { Hand } from './hand'
 import { expect } from './watch'
 
@@ -137,8 +137,14 @@ export async function startIt(page: Page, hand: Hand, title: string) {
   await expect(page).toHaveURL(/\/studies\/S-\d+\/jars$/)
 }
 
-export async function printLabels(page: Page, hand: Hand): Promise<Locator> {
+/** The codes on the sheets of labels, as they leave the printer. */
+export async function printLabels(page: Page, hand: Hand): Promise<string[]> {
   await hand.press(page.getByRole('link', { name: 'Print the labels' }))
-  await expect(page.getByRole('heading', { level: 1 })).toHaveText(/^\d+\slabels/)
-  return page.getByRole('img', { name: /^Square of jar [0-9A-Z]{5}$/ })
+  await expect(page.getByRole('heading', { level: 1 })).toHaveText(/^\d+\slabels on /)
+  const sheets = page.getByRole('img', { name: /^Sheet \d+: / })
+  await expect(sheets.first()).toBeVisible()
+  const names = await sheets.evaluateAll((drawn) =>
+    drawn.map((sheet) => sheet.getAttribute('aria-label') ?? ''),
+  )
+  return names.flatMap((name) => name.match(/\b[0-9A-Z]{5}\b/g) ?? [])
 }
