@@ -1,7 +1,7 @@
 'use client'
 
 import { useState } from 'react'
-import { dropKept } from './outbox'
+import { entryOutbox } from './kept-entries'
 import type { BatchOutbox } from './use-batch-outbox'
 
 /** Under a bracket: what of this batch is still only on this tablet. Nothing is shown while all is on the server. */
@@ -45,7 +45,7 @@ function Refused({ id, name, sentence }: { id: string; name: string; sentence: s
       </p>
       <button
         type="button"
-        onClick={() => (isAsked ? dropKept(id) : setIsAsked(true))}
+        onClick={() => (isAsked ? entryOutbox.drop((item) => item.id === id) : setIsAsked(true))}
         className="min-h-16 rounded border-2 border-alarm px-4 text-17 text-alarm"
       >
         {isAsked ? 'Yes, put it away' : 'Put it away'}

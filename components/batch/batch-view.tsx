@@ -22,9 +22,16 @@ import type { BatchWork } from './work'
 
 export type BatchPart = 'weighing' | 'process' | 'rest'
 
-type Props = { code: string; part: BatchPart | null; personId: string; mayWrite: boolean }
+type Props = {
+  code: string
+  part: BatchPart | null
+  personId: string
+  mayWrite: boolean
+  /** Whether a study can be started on it by this person. */
+  mayStart: boolean
+}
 
-export function BatchView({ code, part, personId, mayWrite }: Props) {
+export function BatchView({ code, part, personId, mayWrite, mayStart }: Props) {
   const { data, mutate } = useSWR<BatchPage>(batchKey(code), fetcher)
   const isBench = useBench()
   const onSaved = useCallback(() => mutate(), [mutate])
@@ -60,6 +67,11 @@ export function BatchView({ code, part, personId, mayWrite }: Props) {
           <div data-screen-only className="flex flex-wrap items-end gap-x-6 gap-y-2">
             {mayWrite && batch.state !== 'rejected' ? <PaperSwitch paper={paper} onPaper={setPaper} /> : null}
             <LinkButton href={`/batches/${encodeURIComponent(code)}/paper`}>Paper sheet</LinkButton>
+            {mayStart && batch.state === 'released' ? (
+              <LinkButton kind="primary" href={studyOn(batch)}>
+                Start a study on it
+              </LinkButton>
+            ) : null}
           </div>
         }
       />
@@ -71,6 +83,13 @@ export function BatchView({ code, part, personId, mayWrite }: Props) {
       </div>
     </div>
   )
+}
+
+/** The start of a study with this batch, under the protocol that it was sized for. */
+function studyOn({ code, protocolCode }: BatchPage): string {
+  const query = new URLSearchParams({ batch: code })
+  if (protocolCode) query.set('protocol', protocolCode)
+  return `/studies/new?${query}`
 }
 
 /** Where the work is now. */

@@ -4,7 +4,7 @@ import { conditionsText } from '@/components/formula/read-steps'
 import { Heading } from '@/components/ui/heading'
 import type { BatchPage } from '@/lib/batch/queries/get-batch'
 import { stepCautions } from '@/lib/batch/rules/steps'
-import { gramsText, toleranceGrams } from '@/lib/batch/rules/weighing'
+import { gramsText, toleranceGrams, toleranceWords } from '@/lib/batch/rules/weighing'
 import { dayText } from '@/lib/report/rules'
 import { percentText } from '@/lib/formula/rules/numbers'
 import { grouped } from '@/lib/number/rules'
@@ -54,7 +54,7 @@ export function PaperSheet({ batch }: { batch: BatchPage }) {
 
 function Weighing({ batch }: { batch: BatchPage }) {
   return (
-    <Part title={`Weighing, within ${batch.tolerancePercent} % and never under 0.01 g`}>
+    <Part title={`Weighing, within ${toleranceWords(batch)} and never under 0.01 g`}>
       <Table
         caption="Weighing sheet"
         heads={['Phase', 'Ingredient', '%', 'Target g', 'Allowed', 'Lot', 'Tare g', 'Net g', 'Time', 'By']}

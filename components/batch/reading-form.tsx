@@ -5,12 +5,14 @@ import { Button } from '@/components/ui/button'
 import { ErrorNote } from '@/components/ui/error-note'
 import { Field } from '@/components/ui/field'
 import { Select } from '@/components/ui/select'
+import { TextArea } from '@/components/ui/text-area'
 import type { BatchPage } from '@/lib/batch/queries/get-batch'
 import { batchValue, measured, phPathFor } from '@/lib/batch/rules/readings'
 import { restHours } from '@/lib/batch/rules/rest'
 import { batchAttributes, type BatchAttribute, type ReadingMoment } from '@/lib/batch/schema'
 import { newId } from '@/lib/db/id'
-import { readDecimal } from '@/lib/number/rules'
+import { grouped, readDecimal } from '@/lib/number/rules'
+import { dropCount } from '@/lib/batch/rules/droplets'
 import { ReadingDetailFields, type DetailTexts } from './reading-detail-fields'
 import { figureOf } from './reading-words'
 import { useEntry } from './use-entry'
@@ -76,18 +78,30 @@ export function ReadingForm({ work, moment, corrected, onKept }: Props) {
       />
       {attribute ? (
         <>
-          <Field
-            label={
-              attribute === 'look' ? 'In words' : `Figure${replicate > 1 ? `, replicate ${replicate}` : ''}`
-            }
-            unit={unit}
-            inputMode={attribute === 'look' ? 'text' : 'decimal'}
-            className={attribute === 'look' ? '' : 'text-right'}
-            value={draft.typed}
-            error={fields['typed']}
-            hint={said(attribute, value)}
-            onText={(typed) => set({ typed })}
-          />
+          {attribute === 'droplets' ? (
+            <TextArea
+              label={`Diameters in micrometres${replicate > 1 ? `, replicate ${replicate}` : ''}`}
+              value={draft.typed}
+              error={fields['typed']}
+              hint={said(attribute, value) ?? 'One a drop, or with how many: 2.5 × 12; 3.5 × 30.'}
+              rows={3}
+              onText={(typed) => set({ typed })}
+              wrap="sm:col-span-2"
+            />
+          ) : (
+            <Field
+              label={
+                attribute === 'look' ? 'In words' : `Figure${replicate > 1 ? `, replicate ${replicate}` : ''}`
+              }
+              unit={unit}
+              inputMode={attribute === 'look' ? 'text' : 'decimal'}
+              className={attribute === 'look' ? '' : 'text-right'}
+              value={draft.typed}
+              error={fields['typed']}
+              hint={said(attribute, value)}
+              onText={(typed) => set({ typed })}
+            />
+          )}
           <ReadingDetailFields
             attribute={attribute}
             batch={batch}
@@ -132,6 +146,9 @@ function said(attribute: BatchAttribute, value: ReturnType<typeof batchValue> | 
   if (value === null) return undefined
   if ('sentence' in value) return value.sentence
   if (attribute === 'viscosity' && value.value !== null) return figureOf(attribute, value.value)
+  const { drops } = value.detail
+  if (drops)
+    return `${grouped(dropCount(drops), 0)} drops, D[3,2] ${drops.d32.toFixed(2)}, d50 by volume ${drops.d50v.toFixed(2)} micrometres`
   return value.detail.rcf ? `${value.detail.rcf.toFixed(0)} times gravity` : undefined
 }
 

@@ -17,7 +17,9 @@ export function figureOf(attribute: Reading['attribute'], value: number): string
         ? grouped(Number(value.toPrecision(3)), 0)
         : attribute === 'density'
           ? value.toFixed(3)
-          : String(value).replace('-', '\u2212')
+          : attribute === 'droplets'
+            ? value.toPrecision(3)
+            : String(value).replace('-', '\u2212')
   return unit ? `${text} ${unit}` : text
 }
 

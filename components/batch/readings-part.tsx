@@ -7,7 +7,9 @@ import type { BatchPage } from '@/lib/batch/queries/get-batch'
 import { currentReadings, initialOf, measured } from '@/lib/batch/rules/readings'
 import { restOf } from '@/lib/batch/rules/rest'
 import type { ReadingMoment } from '@/lib/batch/schema'
+import { BatchPhotos } from './batch-photos'
 import { dayAndHour } from './balance-choice'
+import { DropsFigures, sauterFacts } from './drops-figures'
 import { ReadingForm } from './reading-form'
 import { figureOf, howRead, rcfFacts, torqueFacts } from './reading-words'
 import type { BatchWork } from './work'
@@ -52,6 +54,7 @@ export function ReadingsPart({ work, moment }: { work: BatchWork; moment: Readin
           <b>{figureOf('viscosity', viscosity)}</b> is the mean of the replicates that count.
         </p>
       ) : null}
+      {moment === 'initial' ? <BatchPhotos work={work} isOpen={isOpen} /> : null}
       {isOpen ? (
         <ReadingForm
           key={`${corrected?.id ?? 'new'} ${readings.length}`}
@@ -78,6 +81,8 @@ function Row({ reading, isCurrent, isOpen, onCorrect }: RowProps) {
         <b className={isCurrent ? '' : 'line-through'}>
           {attribute === 'viscosity' && detail.torquePercent !== undefined && value !== null ? (
             <FigureDetails figure={figure} facts={() => torqueFacts(reading)} />
+          ) : detail.drops ? (
+            <FigureDetails figure={`D[3,2] ${figure}`} facts={() => sauterFacts(detail.drops!)} />
           ) : (
             figure
           )}
@@ -88,6 +93,7 @@ function Row({ reading, isCurrent, isOpen, onCorrect }: RowProps) {
             <FigureDetails figure={`${detail.rcf.toFixed(0)} times gravity`} facts={() => rcfFacts(detail)} />
           </>
         ) : null}
+        {detail.drops ? <DropsFigures drops={detail.drops} /> : null}
         <span className="block text-15 text-soft">
           {[
             howRead(reading),

@@ -17,13 +17,14 @@ import { gramsOf, sizeFor, usualYieldPercent } from '@/lib/batch/rules/size'
 import { newId } from '@/lib/db/id'
 import { grouped, readDecimal } from '@/lib/number/rules'
 import { ClientError, send } from '@/lib/http/fetcher'
+import { usualWeighingTolerancePercent } from '@/lib/lab/rules'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
 import { totalGrams } from '@/lib/science/making'
 import { sizeFacts } from './size-facts'
 import { GramsDrawn } from './grams-drawn'
 
 type Props = {
-  formulas: { code: string; name: string; versionId: string; versionNumber: number }[]
+  formulas: { code: string; name: string; versionId: string; versionNumber: number; state: string }[]
   protocols: { code: string; name: string; versionId: string; number: number; plan: ProtocolPlan }[]
   formulaCode: string | null
 }
@@ -46,6 +47,9 @@ export function SizeBatch({ formulas, protocols, formulaCode }: Props) {
     plans.map((one) => one.plan),
     yieldPercent,
   )
+  const narrowest = plans
+    .flatMap(({ plan }) => plan.weighingTolerancePercent ?? [])
+    .toSorted((a, b) => a - b)[0]
   const sizeText = typed.size.trim() || (enough === null ? '' : String(enough))
   const sizeG = readDecimal(sizeText)
   const needs = plans.map((one) => ({ name: one.name, ...gramsOf(one.plan) }))
@@ -58,7 +62,10 @@ export function SizeBatch({ formulas, protocols, formulaCode }: Props) {
       const tolerancePercent = typed.tolerance.trim()
         ? (readDecimal(typed.tolerance) ?? typed.tolerance)
         : null
-      const body = { id, formulaVersionId: versionId, sizeG: sizeG ?? sizeText, tolerancePercent }
+      const body = {
+        ...{ id, formulaVersionId: versionId, sizeG: sizeG ?? sizeText, tolerancePercent },
+        protocolVersionIds: plans.map((one) => one.versionId),
+      }
       const batch = await send<{ code: string }>('/api/batches', 'POST', body, { key: id })
       router.push(`/batches/${batch.code}`)
     } catch (thrown) {
@@ -119,6 +126,11 @@ export function SizeBatch({ formulas, protocols, formulaCode }: Props) {
               label: `${one.code}, ${one.name}, version ${one.versionNumber}`,
             }))}
             onPick={setVersionId}
+            hint={
+              formulas.find((one) => one.versionId === versionId)?.state === 'draft'
+                ? 'A draft: the batch locks it, and what changes later goes into a new version.'
+                : undefined
+            }
           />
           <fieldset>
             <legend className="text-15 font-600">Enough for</legend>
@@ -159,7 +171,12 @@ export function SizeBatch({ formulas, protocols, formulaCode }: Props) {
               unit="%"
               value={typed.tolerance}
               error={fields['tolerancePercent']}
-              hint="Of each weight; empty takes the lab’s, usually 1 %."
+              placeholder={narrowest === undefined ? '' : String(narrowest)}
+              hint={
+                narrowest === undefined
+                  ? `Of each weight; empty takes the lab’s, ${usualWeighingTolerancePercent} % if it says nothing.`
+                  : `Of each weight; empty takes ${narrowest} % as the protocol asks.`
+              }
               onText={(tolerance) => set({ tolerance })}
             />
           </div>

@@ -1,6 +1,6 @@
 import { useState } from 'react'
 import { ClientError } from '@/lib/http/fetcher'
-import type { NewEntry } from './outbox'
+import type { NewEntry } from './kept-entries'
 import type { BatchWork } from './work'
 
 /** One entry at the batch: kept or sent, its refusal beside what was typed. */

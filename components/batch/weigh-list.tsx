@@ -5,6 +5,7 @@ import { FigureDetails } from '@/components/ui/figure-details'
 import { gramsIn, gramsText, percentOffText, weighed } from '@/lib/batch/rules/weighing'
 import type { BatchPage } from '@/lib/batch/queries/get-batch'
 import { weighingFacts } from './batch-facts'
+import { OffMark } from './off-mark'
 
 type Line = BatchPage['weighings'][number]
 type Props = {
@@ -118,6 +119,11 @@ function WeighRow({
         ) : (
           ''
         )}
+        {verdict ? (
+          <span className="block text-14 leading-tight">
+            <OffMark isWithin={verdict.isWithin} differenceG={verdict.differenceG} /> {verdict.told}
+          </span>
+        ) : null}
       </td>
     </tr>
   )

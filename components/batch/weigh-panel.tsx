@@ -5,7 +5,7 @@ import { useWidth } from '@/components/charts/use-width'
 import { BandBar } from '@/components/marks/band-bar'
 import { Button } from '@/components/ui/button'
 import { ErrorNote } from '@/components/ui/error-note'
-import { gramsText, percentOffText, toleranceGrams } from '@/lib/batch/rules/weighing'
+import { gramsText, percentOffText, toleranceGrams, toleranceWords } from '@/lib/batch/rules/weighing'
 import type { BatchPage } from '@/lib/batch/queries/get-batch'
 import { percentText } from '@/lib/formula/rules/numbers'
 import { newId } from '@/lib/db/id'
@@ -115,7 +115,7 @@ export function WeighPanel({ work, line, next, balance, draft, now, onDraft, onK
           />
           <p className="mt-1 text-17 text-soft">
             {gramsText(line.targetG - tolerance)} to {gramsText(line.targetG + tolerance)} g,{' '}
-            {batch.tolerancePercent} % and never under 0.01 g
+            {toleranceWords(batch)} and never under 0.01 g
           </p>
         </div>
         <WeighFields

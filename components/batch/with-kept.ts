@@ -1,7 +1,7 @@
 import type { BatchPage } from '@/lib/batch/queries/get-batch'
 import { currentPortions, gramsIn, readWeight } from '@/lib/batch/rules/weighing'
 import { doStepInput, fillJarInput, batchReadingInput, weighInput } from '@/lib/batch/schema'
-import type { KeptEntry } from './outbox'
+import type { KeptEntry } from './kept-entries'
 
 /** The batch as it will be once what this tablet keeps has gone out: shown at once, versions counted on. */
 export function withKept(batch: BatchPage, kept: readonly KeptEntry[]): BatchPage {

@@ -1,4 +1,4 @@
-import type { Kept } from '@/components/bench/outbox'
+import type { KeptJar } from '@/components/bench/kept-jars'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 
 /** What one should know before typing: an entry that waits on this tablet, or someone else at the same jar. */
@@ -8,7 +8,7 @@ export function JarNotices({
   isOthers,
 }: {
   jar: BenchJarPage
-  kept: Kept | undefined
+  kept: KeptJar | undefined
   isOthers: boolean
 }) {
   return (

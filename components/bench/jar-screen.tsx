@@ -15,7 +15,7 @@ import { MissDialog } from '@/components/bench/miss-dialog'
 import { nextJar } from '@/components/bench/next-jar'
 import { OverviewPanel } from '@/components/bench/overview-panel'
 import { NotePanel, PhotoPanel, WordPanel } from '@/components/bench/other-panels'
-import { dropKept, isPassing, keep } from '@/components/bench/outbox'
+import { jarOutbox } from '@/components/bench/kept-jars'
 import { RestPanel } from '@/components/bench/rest-panel'
 import { SlotTabs, type TabState } from '@/components/bench/slot-tabs'
 import type { Outbox } from '@/components/bench/tray'
@@ -25,10 +25,12 @@ import { verdictOf } from '@/components/bench/verdict'
 import { WalkStrip } from '@/components/bench/walk-strip'
 import { Button } from '@/components/ui/button'
 import { ErrorNote } from '@/components/ui/error-note'
+import { isPassing } from '@/components/ui/outbox'
 import { toast } from '@/components/ui/toast'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 import type { Bench } from '@/lib/bench/queries/today'
 import { benchKeys } from '@/lib/bench/schema'
+import { newId } from '@/lib/db/id'
 import { ClientError, fetcher, send } from '@/lib/http/fetcher'
 import { pullKeys } from '@/lib/pull/schema'
 
@@ -91,7 +93,8 @@ function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }: OpenP
     slot,
     verdict: verdictOf(slot.field, entryOf(slot.field.attribute, slot.replicate), jar),
   }))
-  const keptHere = outbox.kept.find((k) => k.pullJarId === jar.pullJarId)
+  const isThisJar = (kept: { pullJarId: string }) => kept.pullJarId === jar.pullJarId
+  const keptHere = outbox.kept.find(isThisJar)
   const isDone = jar.state === 'done' || jar.state === 'missed'
   const isResting = jar.state === 'resting' && !jar.isReady
   const mayType = person.mayLog && !isDone && !isResting && !jar.isEarly && jar.isStudyRunning
@@ -147,7 +150,7 @@ function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }: OpenP
     setError(null)
     try {
       await send(pullKeys.readings(jar.pullJarId), 'POST', body)
-      dropKept(jar.pullJarId)
+      jarOutbox.drop(isThisJar)
       done(`Kept: ${jar.name}`)
     } catch (refused) {
       if (!(refused instanceof ClientError)) setError(refused)
@@ -155,14 +158,13 @@ function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }: OpenP
         // Asked here, because nobody will be at the jar when the entry goes out.
         setAsked(askLocally(missing))
       } else if (isPassing(refused)) {
-        keep({
-          personId: person.personId,
-          url: pullKeys.readings(jar.pullJarId),
-          body,
-          pullJarId: jar.pullJarId,
-          jarName: jar.name,
-          code: jar.code,
-        })
+        jarOutbox.keep(
+          {
+            ...{ id: newId(), personId: person.personId, url: pullKeys.readings(jar.pullJarId), body },
+            ...{ pullJarId: jar.pullJarId, jarName: jar.name, code: jar.code },
+          },
+          isThisJar,
+        )
         outbox.setOnline(false)
         done(`Kept on this tablet: ${jar.name}. It goes out when the network is back.`)
       } else if (refused.code === 'confirm') setAsked(refused)
@@ -174,7 +176,7 @@ function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }: OpenP
   }
 
   function done(sentence: string) {
-    if (!outbox.kept.some((k) => k.pullJarId === jar.pullJarId)) forget()
+    if (!outbox.kept.some(isThisJar)) forget()
     setAsked(null)
     setTwice(null)
     toast(sentence)

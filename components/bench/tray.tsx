@@ -1,7 +1,7 @@
-import type { useOutbox } from '@/components/bench/use-outbox'
+import type { useJarOutbox } from '@/components/bench/kept-jars'
 import { JarGlyph } from '@/components/marks/jar-glyph'
 
-export type Outbox = ReturnType<typeof useOutbox>
+export type Outbox = ReturnType<typeof useJarOutbox>
 
 /** The bracket under jars that are still only on this tablet; nothing is shown while all is on the server. */
 export function Tray({ outbox }: { outbox: Outbox }) {

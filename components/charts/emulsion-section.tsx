@@ -51,8 +51,9 @@ export function EmulsionSection({
   const pitch = questions.length > 0 ? height / questions.length : height
   const caption = (
     <p className="max-w-[400px] pt-2 text-13 text-soft">
-      A cut through it, to scale: the {inside} takes {percent} % of the area.
-      {note ? ` ${note}` : dropMicrometres === null ? ' The size of the drops has not been measured.' : ''}
+      A cut through it, to scale: the {inside} takes {percent} % of the area as of the volume, in drops of
+      mixed sizes as they pack.
+      {dropMicrometres === null ? ' The size of the drops has not been measured.' : note ? ` ${note}` : ''}
     </p>
   )
   return (

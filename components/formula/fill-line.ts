@@ -22,7 +22,7 @@ export function filledFrom(line: TypedLine, ingredient: IngredientRow): Partial<
 
 export function linesFromPaste(
   pasted: readonly PastedLine[],
-  known: readonly IngredientRow[],
+  found: (name: string) => IngredientRow | null,
   /** The line that was pasted into: what the block does not say is as it is there. */
   at: TypedLine | undefined,
   lines: readonly TypedLine[],
@@ -38,7 +38,7 @@ export function linesFromPaste(
       ...{ inciName: one.inciName, function: one.function, percent: one.percent },
       ...{ density: one.density, price: one.price, isRemainder: index === remainderAt },
     }
-    const ingredient = known.find((row) => row.inciName.toLowerCase() === one.inciName.toLowerCase())
+    const ingredient = found(one.inciName)
     if (!ingredient) return typed
     const filled = filledFrom(typed, ingredient)
     return { ...typed, ...filled, density: one.density || filled.density || '' }

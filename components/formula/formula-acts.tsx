@@ -5,7 +5,6 @@ import { LinkButton } from '@/components/ui/link-button'
 import type { FormulaPage } from '@/lib/formula/queries/get-formula'
 import { percentText } from '@/lib/formula/rules/numbers'
 import type { FormulaTotals } from '@/lib/formula/rules/totals'
-import { MakeBatch } from './make-batch'
 import { NewVersion } from './new-version'
 import type { DraftHandle } from './use-draft'
 
@@ -29,7 +28,13 @@ export function FormulaActs({ formula, handle, totals, onSave }: Props) {
       ) : (
         <LinkButton href={`/formulas/${formula.code}/variants?version=${formula.number}`}>Vary it</LinkButton>
       )}
-      <MakeBatch formula={formula} why={why} />
+      {why ? (
+        <Button why={why}>Make a batch</Button>
+      ) : (
+        <LinkButton href={`/batches/new?formula=${formula.code}&version=${formula.number}`}>
+          Make a batch
+        </LinkButton>
+      )}
       {formula.state === 'draft' ? (
         <Button kind="primary" busy={handle.isSaving} onClick={onSave}>
           Save the draft

@@ -38,7 +38,7 @@ export function FormulaEditor({ formula, part, personId, mayWrite, isClient, onR
   const totals = useMemo(() => formulaTotals(amounts), [amounts])
   const steps = useMemo(() => draft.steps.flatMap((typed) => readStep(typed).step ?? []), [draft.steps])
   const checks = useChecks(formula, draft, steps)
-  const finding = formulaFinding(draft.emulsionType, totals, checks)
+  const finding = formulaFinding(draft.emulsionType, totals, checks, formula.drops?.diameterUm)
   const before = formula.before
     ? new Map(
         formula.before.lines.map((line) => [

@@ -1,8 +1,10 @@
+import type { DropsFound } from '@/lib/formula/queries/find-drops'
 import { percentText } from '@/lib/formula/rules/numbers'
 import type { Amounts, FormulaTotals, PhaseTotal } from '@/lib/formula/rules/totals'
 import { costMethod, jarCostMethod, oilWaterMethod, totalMethod } from '@/lib/science/methods/making'
 import { exactly, factsOf, type FigureFacts } from '@/lib/science/methods/method'
-import { phaseFractionMethod } from '@/lib/science/methods/emulsion'
+import { filmMethod, phaseFractionMethod } from '@/lib/science/methods/emulsion'
+import { filmThickness } from '@/lib/science/film'
 import { highInternalPhaseAbove } from '@/lib/science/phase-fraction'
 
 type Lines = readonly Amounts[]
@@ -42,6 +44,18 @@ export function highInternalFacts(lines: Lines, totals: FormulaTotals): FigureFa
     lines: [0, 1, 3],
     values: { volume: totals.internalVolumePercent, limit: 100 * highInternalPhaseAbove },
     input: fractionInput(lines, (line) => line.isInternal),
+  })
+}
+
+export function filmFacts(
+  { internalVolumePercent }: FormulaTotals,
+  { diameterUm, batchCode }: DropsFound,
+): FigureFacts {
+  const { filmNm } = filmThickness({ internalVolumePercent: internalVolumePercent ?? 0, diameterUm })
+  return factsOf(filmMethod, {
+    name: `Film between drops as measured in ${batchCode}`,
+    result: exactly(filmNm, 'nm'),
+    values: { volume: internalVolumePercent, diameterUm },
   })
 }
 

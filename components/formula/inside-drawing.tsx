@@ -2,20 +2,22 @@
 
 import { EmulsionSection } from '@/components/charts/emulsion-section'
 import { PhiRuler } from '@/components/charts/phi-ruler'
+import type { DropsFound } from '@/lib/formula/queries/find-drops'
 import type { FormulaPage } from '@/lib/formula/queries/get-formula'
 import type { FormulaCheck } from '@/lib/formula/rules/checks'
-import { innerWord } from '@/lib/formula/rules/finding'
+import { filmText, innerWord } from '@/lib/formula/rules/finding'
 import { formulaTotals, type Amounts, type FormulaTotals } from '@/lib/formula/rules/totals'
 import type { EmulsionType } from '@/lib/formula/schema'
 import { FigureDetails } from '@/components/ui/figure-details'
 import { CheckTitle } from './checks-room'
 import { answerText } from './checks-words'
-import { highInternalFacts, insideFacts } from './formula-facts'
+import { filmFacts, highInternalFacts, insideFacts } from './formula-facts'
 
 type Props = {
   totals: FormulaTotals
   amounts: readonly Amounts[]
   before: FormulaPage['before']
+  drops: FormulaPage['drops']
   checks: FormulaCheck[]
   emulsionType: EmulsionType
   /** Of the version on screen. */
@@ -23,7 +25,7 @@ type Props = {
 }
 
 /** What is inside: the level, a cut through the emulsion to scale, and the questions that point into it. */
-export function InsideDrawing({ totals, amounts, before, checks, emulsionType, number }: Props) {
+export function InsideDrawing({ totals, amounts, before, drops, checks, emulsionType, number }: Props) {
   const { internalVolumePercent: volume, internalMassPercent: mass } = totals
   if (volume === null || mass === null) {
     return (
@@ -67,9 +69,13 @@ export function InsideDrawing({ totals, amounts, before, checks, emulsionType, n
         <EmulsionSection
           phi={volume / 100}
           inside={innerWord(emulsionType)}
-          dropMicrometres={null}
+          dropMicrometres={drops?.diameterUm ?? null}
           height={Math.max(494, pointing.length * 150)}
-          note="The size of the drops has not been measured."
+          note={
+            drops
+              ? `Drops ${drops.diameterUm.toPrecision(2)} micrometres, as measured in ${drops.batchCode}.`
+              : undefined
+          }
           questions={pointing.map((check) => ({
             id: check.key,
             title: <CheckTitle check={check} />,
@@ -79,8 +85,28 @@ export function InsideDrawing({ totals, amounts, before, checks, emulsionType, n
             at: check.at ?? 'film',
           }))}
         />
+        {drops ? (
+          <FilmNote
+            totals={totals}
+            drops={drops}
+            outside={emulsionType === 'oil-in-water' ? 'water' : 'oil'}
+          />
+        ) : null}
       </div>
     </div>
+  )
+}
+
+/** How thin the continuous phase is between packed drops, and what that takes for granted. */
+function FilmNote({ totals, drops, outside }: { totals: FormulaTotals; drops: DropsFound; outside: string }) {
+  const film = filmText(totals, drops.diameterUm)
+  if (!film) return null
+  return (
+    <p className="max-w-[400px] pt-1 text-13 text-soft">
+      The {outside} between two drops is{' '}
+      <FigureDetails figure={film} facts={() => filmFacts(totals, drops)} className="text-ink" /> thick on
+      average, if all of it lies in even films; the corners hold more, so the films are thinner.
+    </p>
   )
 }
 

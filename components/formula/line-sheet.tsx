@@ -29,6 +29,7 @@ type Props = {
   before: Map<string, string> | null
   onLines: ChangeLines
   onProblem: (sentence: string) => void
+  onTold: (sentences: string[]) => void
   undo: DraftHandle['undo']
   foot: React.ReactNode
 }
@@ -43,6 +44,7 @@ export function LineSheet({
   before,
   onLines,
   onProblem,
+  onTold,
   undo,
   foot,
 }: Props) {
@@ -55,7 +57,7 @@ export function LineSheet({
   )
   const { drop, start } = useRowDrag(sheet, onDrop)
   const { acts, addLine } = useLineActs({ sheet, emulsionType, onLines, onProblem, start })
-  const paste = usePaste({ sheet, lines, onLines, onProblem })
+  const paste = usePaste({ sheet, lines, onLines, onProblem, onTold })
 
   function press(event: KeyboardEvent<HTMLTableElement>) {
     const field = event.target instanceof HTMLInputElement ? event.target : null

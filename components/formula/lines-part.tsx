@@ -38,6 +38,7 @@ type Props = {
 export function LinesPart({ formula, handle, mayWrite, isOpen, totals, phases, checks, before }: Props) {
   const { draft, amounts, problems, change } = handle
   const [problem, setProblem] = useState('')
+  const [told, setTold] = useState<string[]>([])
   const sheet = useRef<HTMLDivElement>(null)
   const beforeNumber = before ? (formula.before?.number ?? null) : null
   const foot = (
@@ -72,12 +73,14 @@ export function LinesPart({ formula, handle, mayWrite, isOpen, totals, phases, c
                 before={before}
                 onLines={onLines}
                 onProblem={setProblem}
+                onTold={setTold}
                 undo={handle.undo}
                 foot={foot}
               />
               <div className="mt-3">
                 <ErrorNote error={problem || null} />
               </div>
+              <PastedNote told={told} onSeen={() => setTold([])} />
               <TwiceNote lines={lines} onLines={onLines} />
               <Facts handle={handle} />
             </>
@@ -105,6 +108,7 @@ export function LinesPart({ formula, handle, mayWrite, isOpen, totals, phases, c
         totals={totals}
         amounts={amounts}
         before={formula.before}
+        drops={formula.drops}
         checks={checks}
         emulsionType={draft.emulsionType}
         number={formula.number}
@@ -114,6 +118,26 @@ export function LinesPart({ formula, handle, mayWrite, isOpen, totals, phases, c
         checks={checks.filter((check) => check.at === null || totals.internalVolumePercent === null)}
         className="min-w-0 gap-x-8 sm:columns-2 lg:pl-[120px] xl:col-start-1 xl:row-start-2 [&>li]:mb-4"
       />
+    </div>
+  )
+}
+
+/** Which names of a pasted block the book has under another one; it stays until it was read. */
+function PastedNote({ told, onSeen }: { told: string[]; onSeen: () => void }) {
+  return (
+    <div role="status" className="mt-3 empty:hidden">
+      {told.length ? (
+        <div className="border-l-4 border-ink py-0.5 pl-3">
+          <ul>
+            {told.map((sentence) => (
+              <li key={sentence}>{sentence}</li>
+            ))}
+          </ul>
+          <button type="button" className="font-650 underline underline-offset-4" onClick={onSeen}>
+            Seen
+          </button>
+        </div>
+      ) : null}
     </div>
   )
 }

@@ -19,6 +19,7 @@ import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
 import { AttributeEditor } from './attribute-editor'
 import { PlanGrid } from './plan-grid'
 import { NumberPart } from './number-part'
+import { WeighingTolerance } from './weighing-tolerance'
 import { ReadLess } from './read-less'
 import { StationEditor } from './station-editor'
 
@@ -165,6 +166,7 @@ export function PlanEditor({ code, name: savedName, version, onLeave, onSaved }:
             value={plan.lossPercent}
             onNumber={(lossPercent) => set({ lossPercent })}
           />
+          <WeighingTolerance plan={plan} onSet={set} error={fields['plan.weighingTolerancePercent']} />
           <NumberPart label="Rest, h" value={plan.restHours} onNumber={(restHours) => set({ restHours })} />
           <NumberPart
             label="Initial jars"

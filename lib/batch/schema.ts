@@ -1,5 +1,6 @@
 import { emulsionTypes } from '@/lib/formula/schema'
 import { z } from '@/lib/http/zod'
+import { deviceTimes } from '@/lib/reading/schema/entry'
 
 export const batchStates = ['making', 'resting', 'released', 'rejected'] as const
 export type BatchState = (typeof batchStates)[number]
@@ -21,7 +22,9 @@ export const createBatchInput = z.object({
   id: z.uuid(),
   formulaVersionId: z.uuid(),
   sizeG: grams('The batch size').min(10, 'A batch is at least 10 g; less cannot be weighed to a percent.'),
-  /** Null: the lab's own. */
+  /** The protocols it is sized for; the narrowest of their tolerances counts. */
+  protocolVersionIds: z.array(z.uuid()).max(12, 'A batch is sized for at most 12 protocols.').default([]),
+  /** Null: that of the protocols, else the lab's own. */
   tolerancePercent: z
     .number('Give the tolerance in % as a number.')
     .min(0.01, 'A tolerance is at least 0.01 %.')
@@ -153,20 +156,26 @@ export const batchReadingDetail = z.strictObject({
 })
 export type BatchReadingDetail = z.infer<typeof batchReadingDetail>
 
-export const batchReadingInput = z.object({
-  id: z.uuid(),
-  moment: z.enum(readingMoments, 'Say whether it was read in process or as the initial.'),
-  attribute: z.enum(batchAttributes, 'Choose what was read.'),
-  replicate: z.number().int().min(1).max(99).default(1),
-  typed: z.string().trim().min(1, 'Type what was read.').max(200, 'At most 200 signs fit here.'),
-  detail: batchReadingDetail.default({}),
-  instrumentId: z.uuid().nullable().default(null),
-  note: text(500),
-  supersedes: z.uuid().nullable().default(null),
-  /** Asked for with a correction, and before the rest is over. */
-  reason: text(500),
-  ...claim,
-})
+export const batchReadingInput = z
+  .object({
+    id: z.uuid(),
+    moment: z.enum(readingMoments, 'Say whether it was read in process or as the initial.'),
+    attribute: z.enum(batchAttributes, 'Choose what was read.'),
+    replicate: z.number().int().min(1).max(99).default(1),
+    /** A count of drops is as long as the drops are many. */
+    typed: z.string().trim().min(1, 'Type what was read.').max(12_000, 'At most 12 000 signs fit here.'),
+    detail: batchReadingDetail.default({}),
+    instrumentId: z.uuid().nullable().default(null),
+    note: text(500),
+    supersedes: z.uuid().nullable().default(null),
+    /** Asked for with a correction, and before the rest is over. */
+    reason: text(500),
+    ...claim,
+  })
+  .refine(({ attribute, typed }) => attribute === 'droplets' || typed.length <= 200, {
+    path: ['typed'],
+    message: 'At most 200 signs fit here.',
+  })
 export type BatchReadingInput = z.infer<typeof batchReadingInput>
 
 export const finishMakingInput = z.object({
@@ -205,5 +214,15 @@ export const decideInput = z.object({
 export type DecideInput = z.infer<typeof decideInput>
 
 export const batchAddress = z.object({ code: z.string().max(60) })
+export const batchPhotoAddress = batchAddress.extend({ id: z.uuid() })
 
+/** Fields of the form that carries the picture. */
+export const batchPhotoFields = deviceTimes.extend({ id: z.uuid(), note: text(500) })
+export type BatchPhotoFields = z.infer<typeof batchPhotoFields>
+
+export const batchPhotoKeys = {
+  add: (code: string) => `/api/batches/${encodeURIComponent(code)}/photos`,
+  preview: (code: string, id: string) => `${batchPhotoKeys.add(code)}/${id}/preview`,
+  original: (code: string, id: string) => `${batchPhotoKeys.add(code)}/${id}/original`,
+}
 export const batchKey = (code: string) => `/api/batches/${encodeURIComponent(code)}`

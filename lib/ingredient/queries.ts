@@ -51,14 +51,25 @@ export async function searchIngredients(db: Db, _actor: Actor, q: string) {
 
 export type FoundIngredient = Awaited<ReturnType<typeof searchIngredients>>[number]
 
-/** Those of the names that are among the ingredients, whatever their capitals. */
+/** Those of the names that are in the book, as INCI name, synonym or supplier's own name, whatever their capitals and spaces. */
 export async function listIngredientsNamed(db: Db, _actor: Actor, names: readonly string[]) {
   const wanted = names.map(comparable)
   if (!wanted.length) return []
   return db
     .selectFrom('ingredient')
-    .select(lineColumns)
-    .where(sql<string>`lower(inci_name)`, 'in', wanted)
+    .select([...lineColumns, ...nameColumns])
+    .where((eb) =>
+      eb.or([
+        eb(compared(sql`inci_name`), 'in', wanted),
+        eb(compared(sql`supplier_name`), 'in', wanted),
+        eb.exists(
+          eb
+            .selectFrom(sql<{ name: string }>`unnest(ingredient.synonyms)`.as<'synonym'>(sql`synonym(name)`))
+            .select('synonym.name')
+            .where(compared(sql`synonym.name`), 'in', wanted),
+        ),
+      ]),
+    )
     .execute()
 }
 
@@ -215,6 +226,11 @@ async function listFunctions(db: Db): Promise<string[]> {
 function namedLike(typed: string): Expression<SqlBool> {
   return sql<SqlBool>`(lower(inci_name) like ${typed} or lower(supplier_name) like ${typed}
     or lower(array_to_string(synonyms, chr(10))) like ${typed})`
+}
+
+/** As `comparable` has it. */
+function compared(name: Expression<unknown>) {
+  return sql<string>`lower(regexp_replace(btrim(${name}), '\\s+', ' ', 'g'))`
 }
 
 function likeText(q: string): string {

@@ -2,9 +2,9 @@ import { percentText } from '@/lib/formula/rules/numbers'
 import { choice, describeList } from '@/lib/list/schema'
 import type { BookRow } from './queries'
 
-/** As a search compares names: without capitals and without the spaces around them. */
+/** As names are compared: without capitals, and with one space where there are several or none at the ends. */
 export function comparable(typed: string): string {
-  return typed.trim().toLowerCase()
+  return typed.trim().replace(/\s+/g, ' ').toLowerCase()
 }
 
 export type Match = { in: 'synonym' | 'supplier'; text: string }
@@ -19,6 +19,26 @@ export function matchOf(
   const synonym = row.synonyms.find((name) => name.toLowerCase().includes(sought))
   if (synonym) return { in: 'synonym', text: synonym }
   return row.supplierName.toLowerCase().includes(sought) ? { in: 'supplier', text: row.supplierName } : null
+}
+
+type Names = { inciName: string; synonyms: readonly string[]; supplierName: string }
+
+/**
+ * The ingredient that a name stands for: by INCI name, else by a synonym, else by the supplier's own name for it. Null
+ * where none has it, or several have and only a person can tell.
+ */
+export function findNamed<Row extends Names>(
+  rows: readonly Row[],
+  name: string,
+): { row: Row; match: Match | null } | null {
+  const sought = comparable(name)
+  const isIt = (other: string) => comparable(other) === sought
+  const [byName] = rows.filter((row) => isIt(row.inciName))
+  if (byName) return { row: byName, match: null }
+  const bySynonym = rows.filter((row) => row.synonyms.some(isIt))
+  const found = bySynonym.length ? bySynonym : rows.filter((row) => isIt(row.supplierName))
+  if (found.length !== 1 || !found[0]) return null
+  return { row: found[0], match: { in: bySynonym.length ? 'synonym' : 'supplier', text: name.trim() } }
 }
 
 /** Each synonym once, and none that is the INCI name itself. */

@@ -27,10 +27,7 @@ export async function addPhoto(trx: Trx, actor: Actor, file: Received, fields: P
       throw refuse.conflict('Another photo was sent under this id. Send this one anew.')
     return { id: known.id }
   }
-  const size = await checkPicture(file)
-  const files = storage()
-  const key = originalKey(file.sha256)
-  if (!(await files.has(key))) await files.put(key, file.path, file.type)
+  const picture = await keepPicture(trx, file)
   await trx
     .insertInto('photo')
     .values({
@@ -38,17 +35,22 @@ export async function addPhoto(trx: Trx, actor: Actor, file: Received, fields: P
       studyId: jar.studyId,
       jarId: jar.jarId,
       pullJarId: fields.pullJarId,
-      sha256: file.sha256,
-      bytes: file.bytes,
-      type: file.type,
-      ...size,
-      originalName: file.originalName,
+      ...picture,
       takenBy: actor.personId,
       takenAt: claimedInstant(fields, now).measuredAt,
     })
     .execute()
-  await enqueue(trx, previewQueue, { sha256: file.sha256 })
   return { id: fields.id }
+}
+
+/** A picture checked and stored whole, and what of it a row keeps. Its small picture is made ahead by a job. */
+export async function keepPicture(trx: Trx, { sha256, bytes, type, originalName, path }: Received) {
+  const size = await checkPicture({ path, type })
+  const files = storage()
+  const key = originalKey(sha256)
+  if (!(await files.has(key))) await files.put(key, path, type)
+  await enqueue(trx, previewQueue, { sha256 })
+  return { sha256, bytes, type, ...size, originalName }
 }
 
 async function findJar(trx: Trx, pullJarId: string) {
@@ -66,7 +68,9 @@ async function findJar(trx: Trx, pullJarId: string) {
   return jar
 }
 
-async function checkPicture(file: Received): Promise<{ width: number; height: number }> {
+async function checkPicture(
+  file: Pick<Received, 'path' | 'type'>,
+): Promise<{ width: number; height: number }> {
   if (heic.includes(file.type)) {
     throw refuse.unsupported(
       'This photo is HEIC, which browsers cannot show. Set the camera to the most compatible format (JPEG), or save the photo as JPEG, and send it again.',

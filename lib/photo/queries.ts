@@ -40,27 +40,32 @@ export async function listPhotos(db: Db, actor: Actor, studyCode: string, jarCod
 /** The file as it came, byte for byte. */
 export async function getOriginal(db: Db, actor: Actor, id: string): Promise<Download> {
   const photo = await findFile(db, actor, id)
-  const body = await storage().get(originalKey(photo.sha256))
-  if (!body)
-    throw refuse.notFound(
-      `The file of this photo of jar ${photo.jarCode} is not in the store. Tell the manager.`,
-    )
-  return {
-    body,
-    type: photo.type,
-    fileName: photo.originalName || `${photo.jarCode}.${extensionOf(photo.type)}`,
-  }
+  return originalOf(photo, photo.jarCode)
 }
 
 /** The small picture; made now where the job has not come to it. */
 export async function getPreview(db: Db, actor: Actor, id: string): Promise<Download> {
   const photo = await findFile(db, actor, id)
-  const body = await keptPreview(photo.sha256)
-  if (!body)
-    throw refuse.notFound(
-      `The file of this photo of jar ${photo.jarCode} is not in the store. Tell the manager.`,
-    )
+  return previewOf(photo, photo.jarCode)
+}
+
+type File = { sha256: string; type: string; originalName: string }
+
+/** `of` is the jar or batch that is on it. */
+export async function originalOf({ sha256, type, originalName }: File, of: string): Promise<Download> {
+  const body = await storage().get(originalKey(sha256))
+  if (!body) throw notStored(of)
+  return { body, type, fileName: originalName || `${of}.${extensionOf(type)}` }
+}
+
+export async function previewOf({ sha256 }: Pick<File, 'sha256'>, of: string): Promise<Download> {
+  const body = await keptPreview(sha256)
+  if (!body) throw notStored(of)
   return { body, type: 'image/jpeg', inline: true }
+}
+
+function notStored(of: string) {
+  return refuse.notFound(`The file of this photo of ${of} is not in the store. Tell the manager.`)
 }
 
 /** From the store, or made from the original and kept there; null where there is no original. */

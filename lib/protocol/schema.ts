@@ -91,6 +91,12 @@ export const protocolPlan = z.object({
   fillG: z.number().positive().max(5000),
   fillHeightMm: z.number().positive().max(500),
   lossPercent: z.number().min(0).max(50),
+  /** How far a line of a batch made for it may be off its target; where it says nothing, as the lab has it. */
+  weighingTolerancePercent: z
+    .number('Give the weighing tolerance in % as a number.')
+    .min(0.01, 'A weighing tolerance is at least 0.01 %.')
+    .max(10, 'More than 10 % is no tolerance for weighing.')
+    .optional(),
   restHours: z.number().min(0).max(72),
   retains: z.number().int().min(0).max(50),
   initialJars: z.number().int().min(0).max(20),

@@ -1,18 +1,28 @@
+import { mkdtemp, rm } from 'node:fs/promises'
+import { tmpdir } from 'node:os'
+import path from 'node:path'
+import { Jimp } from 'jimp'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { sql } from 'kysely'
 import { POST as MAKE } from '@/app/api/batches/route'
 import { GET } from '@/app/api/batches/[code]/route'
 import { POST as FILL } from '@/app/api/batches/[code]/fills/route'
 import { POST as FINISH } from '@/app/api/batches/[code]/finish/route'
+import { POST as PHOTO } from '@/app/api/batches/[code]/photos/route'
+import { GET as ORIGINAL } from '@/app/api/batches/[code]/photos/[id]/original/route'
+import { GET as FORMULA } from '@/app/api/formulas/[code]/route'
 import { POST as READ } from '@/app/api/batches/[code]/readings/route'
 import { PUT as STEP } from '@/app/api/batches/[code]/steps/route'
 import { PUT as WEIGH } from '@/app/api/batches/[code]/weighings/route'
 import { POST as CREATE_FORMULA } from '@/app/api/formulas/route'
+import { readyMadePlan } from '@/lib/protocol/rules/ready-made'
+import { toleranceWords } from '@/lib/batch/rules/weighing'
 import { getBatch, type BatchPage } from '@/lib/batch/queries/get-batch'
 import { newId } from '@/lib/db/id'
 import type { Route } from '@/lib/http/route'
 import { call } from '../support/call'
 import { testDatabase, type Signed, type TestDatabase } from '../support/database'
+import { makeProtocol } from '../support/running-study'
 import { countStatements } from '../support/statements'
 
 let t: TestDatabase
@@ -21,7 +31,11 @@ let rolf: Signed
 const balance = newId()
 const viscometer = newId()
 
+let folder: string
+
 beforeAll(async () => {
+  folder = await mkdtemp(path.join(tmpdir(), 'stillstand-batch-photos-'))
+  process.env['STILLSTAND_FILES'] = folder
   t = await testDatabase()
   lena = await t.person('formulator', { name: 'Lena Brandt' })
   rolf = await t.person('formulator', { name: 'Rolf Adler' })
@@ -38,7 +52,10 @@ beforeAll(async () => {
       .execute()
   })
 })
-afterAll(() => t.close())
+afterAll(async () => {
+  await t.close()
+  await rm(folder, { recursive: true, force: true })
+})
 
 type OwnerTrx = Parameters<Parameters<ReturnType<TestDatabase['owner']['transaction']>['execute']>[0]>[0]
 const asLena = (work: (trx: OwnerTrx) => Promise<unknown>) =>
@@ -47,7 +64,7 @@ const asLena = (work: (trx: OwnerTrx) => Promise<unknown>) =>
     await work(trx)
   })
 
-async function newBatch(code: string, lineCount = 2, tolerancePercent?: number) {
+async function newBatch(code: string, lineCount = 2, more: object = {}) {
   const lines = Array.from({ length: lineCount }, (_, index) => ({
     ...{ id: newId(), phase: index ? 'B' : 'A', inciName: index ? `Aqua ${index}` : 'Squalane' },
     ...{ percentThousandths: 100_000 / lineCount, density: 1, isInternal: index > 0 },
@@ -65,7 +82,7 @@ async function newBatch(code: string, lineCount = 2, tolerancePercent?: number) 
   const versionId = newId()
   const formula = { id: newId(), versionId, code, name: 'Cream', emulsionType: 'water-in-oil', lines, steps }
   expect((await call(CREATE_FORMULA, { cookie: lena.cookie, body: formula })).status).toBe(200)
-  const body = { id: newId(), formulaVersionId: versionId, sizeG: 1000, tolerancePercent }
+  const body = { id: newId(), formulaVersionId: versionId, sizeG: 1000, ...more }
   const made = await call(MAKE, { cookie: lena.cookie, body })
   expect(made.status, JSON.stringify(made.body)).toBe(200)
   return made.body.code as string
@@ -184,7 +201,7 @@ describe('sub-weighings', () => {
   })
 
   it('go by the batch’s own tolerance', async () => {
-    const batch = await newBatch('P6', 2, 2)
+    const batch = await newBatch('P6', 2, { tolerancePercent: 2 })
     const line = (await load(batch)).weighings[0]!
     const body = { id: newId(), weighingId: line.id, version: 1, actualTyped: '510' }
     expect((await put(WEIGH, batch, body)).body).toMatchObject({ isWithin: true })
@@ -196,6 +213,30 @@ describe('sub-weighings', () => {
       actualTyped: '505.1',
     }
     expect((await put(WEIGH, usual, other)).body.error.sentence).toContain('more than 1 %')
+  })
+
+  it('go by the narrowest tolerance of the protocols that the batch was sized for, unless one was typed', async () => {
+    const plan = readyMadePlan('screen', 'cream')
+    const wide = await makeProtocol(lena.actor, { ...plan, weighingTolerancePercent: 2 })
+    const narrow = await makeProtocol(lena.actor, { ...plan, weighingTolerancePercent: 0.5 })
+    const silent = await makeProtocol(lena.actor, plan)
+    const batch = await newBatch('P9', 2, { protocolVersionIds: [silent, wide, narrow] })
+    const page = await load(batch)
+    expect(page).toMatchObject({ tolerancePercent: 0.5, protocolTolerancePercent: 0.5 })
+    expect(page.protocolCode).toMatch(/^P-/)
+    expect(toleranceWords(page)).toBe('0.5 % as A screen asks')
+    const line = page.weighings[0]!
+    const body = { id: newId(), weighingId: line.id, version: 1, actualTyped: '503' }
+    expect((await put(WEIGH, batch, body)).body.error.sentence).toContain('more than 0.5 %')
+    // Typed at the sizing it counts before the protocol's; where a protocol says nothing, the lab's does.
+    const typed = await newBatch('P10', 2, { protocolVersionIds: [narrow], tolerancePercent: 3 })
+    expect(toleranceWords(await load(typed))).toBe('3 %')
+    expect(await load(await newBatch('P11', 2, { protocolVersionIds: [silent] }))).toMatchObject({
+      tolerancePercent: 1,
+    })
+    const versionId = newId()
+    const gone = { id: newId(), formulaVersionId: versionId, sizeG: 1000, protocolVersionIds: [newId()] }
+    expect((await call(MAKE, { cookie: lena.cookie, body: gone })).status).toBe(404)
   })
 
   it('a sheet of forty lines with portions is read in at most eight statements', async () => {
@@ -305,5 +346,57 @@ describe('jars and readings', () => {
       expect(answer.body.error.fields[field], JSON.stringify(answer.body)).toBeTruthy()
     }
     expect((await load(batch)).readings).toHaveLength(0)
+  })
+})
+
+describe('drops and photos of a batch', () => {
+  const readDrops = (batch: string, typed: string, more: object = {}) =>
+    put(READ, batch, { id: newId(), moment: 'initial', attribute: 'droplets', typed, ...more })
+
+  it('a count keeps what was typed and what it comes to; the formula tells the film between drops by it', async () => {
+    const batch = await resting('D1', 30)
+    const bad = await readDrops(batch, '2.5; tiny')
+    expect([bad.status, bad.body.error.fields.typed]).toEqual([422, expect.stringContaining('"tiny"')])
+    expect((await readDrops(batch, '1 × 2; 2')).status).toBe(200)
+    const [reading] = (await load(batch)).readings
+    expect(reading).toMatchObject({ typed: '1 × 2; 2', detail: { drops: { counts: [2, 1] } } })
+    expect(reading?.value).toBeCloseTo(10 / 6, 9)
+    const page = async () => (await call(FORMULA, { cookie: lena.cookie, params: { code: 'D1' } })).body
+    expect((await page()).drops).toMatchObject({ batchCode: batch })
+    const fixed = { supersedes: reading?.id, reason: 'Scale of the other lens' }
+    expect((await readDrops(batch, '3,4', fixed)).status).toBe(200)
+    expect((await page()).drops).toEqual({ batchCode: batch, diameterUm: 3.4 })
+    const words = await put(READ, batch, {
+      ...{ id: newId(), moment: 'initial', attribute: 'look', typed: 'a'.repeat(201) },
+    })
+    expect(words.status).toBe(422)
+  })
+
+  it('D05: a photo is kept once, byte for byte, for whoever reads batches; one that is none is refused', async () => {
+    const batch = await resting('D2', 30)
+    const bytes = new Uint8Array(
+      await new Jimp({ width: 60, height: 40, color: 0x336699ff }).getBuffer('image/png'),
+    )
+    const id = newId()
+    const now = new Date().toISOString()
+    const form = (file: Uint8Array, of: string) => {
+      const data = new FormData()
+      const fields = { id: of, note: 'microscope', deviceNow: now, claimedAt: now }
+      for (const [name, value] of Object.entries(fields)) data.set(name, value)
+      data.set('file', new Blob([file as BlobPart]), 'drops.png')
+      return data
+    }
+    const send = (file: Uint8Array, of = id, who = lena) =>
+      call(PHOTO, { cookie: who.cookie, params: { code: batch }, body: form(file, of) })
+    expect((await send(new TextEncoder().encode('no picture'), newId())).status).toBe(415)
+    for (const answer of [await send(bytes), await send(bytes)]) expect(answer.status).toBe(200)
+    const { photos } = await load(batch)
+    expect(photos).toMatchObject([{ id, note: 'microscope', by: lena.actor.initials }])
+    const technician = await t.person('technician')
+    const original = await call(ORIGINAL, { cookie: technician.cookie, params: { code: batch, id } })
+    expect(new Uint8Array(await original.response.arrayBuffer())).toEqual(bytes)
+    expect((await send(bytes, newId(), technician)).status).toBe(403)
+    expect((await call(ORIGINAL, { cookie: lena.cookie, params: { code: 'D1-1', id } })).status).toBe(404)
+    await expect(t.owner.deleteFrom('batchPhoto').where('id', '=', id).execute()).rejects.toThrow()
   })
 })

@@ -144,6 +144,7 @@ describe('a new batch', () => {
           id: newId(),
           formulaVersionId: versionId,
           sizeG: 100,
+          protocolVersionIds: [],
           tolerancePercent: null,
           note: '',
         }),

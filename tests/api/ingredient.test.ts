@@ -1,6 +1,7 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { GET as BOOK } from '@/app/api/ingredients/book/route'
 import { GET as FACTS } from '@/app/api/ingredients/facts/route'
+import { GET as KNOWN } from '@/app/api/ingredients/known/route'
 import { GET, PUT } from '@/app/api/ingredients/[id]/route'
 import { GET as SEARCH, POST as ADD } from '@/app/api/ingredients/route'
 import { POST as CREATE } from '@/app/api/formulas/route'
@@ -8,6 +9,8 @@ import { demoIngredients } from '@/fixtures/demo/ingredients'
 import { newId } from '@/lib/db/id'
 import { transact } from '@/lib/db/transact'
 import { addIngredients } from '@/lib/ingredient/commands'
+import type { IngredientRow } from '@/lib/ingredient/queries'
+import { findNamed } from '@/lib/ingredient/rules'
 import { ingredientInput } from '@/lib/ingredient/schema'
 import { call } from '../support/call'
 import { countStatements } from '../support/statements'
@@ -217,4 +220,33 @@ it('the demo’s book holds two hundred names or more, each once', () => {
   const all = demoIngredients.map(({ entry }) => entry[0].toLowerCase())
   expect(all.length).toBeGreaterThanOrEqual(200)
   expect(new Set(all).size).toBe(all.length)
+})
+
+describe('names of a pasted block', () => {
+  const known = async (...name: string[]): Promise<IngredientRow[]> =>
+    (
+      await call(KNOWN, {
+        cookie: technician.cookie,
+        path: `/api/ingredients/known?${new URLSearchParams(name.map((one) => ['name', one]))}`,
+      })
+    ).body
+
+  it('are found by INCI name, synonym and supplier’s own name, whatever their capitals and spaces', async () => {
+    const rows = await known('  squalane ', 'OLIVE  92', 'vitamin e', 'Nothing of the kind')
+    expect(rows.map((row) => row.inciName).toSorted()).toEqual(['Squalane', 'Tocopherol'])
+    expect(findNamed(rows, ' SQUALANE')).toMatchObject({ row: { id: squalane }, match: null })
+    expect(findNamed(rows, 'OLIVE  92')).toMatchObject({ row: { id: squalane }, match: { in: 'supplier' } })
+    expect(findNamed(rows, 'vitamin e')).toMatchObject({ row: { id: vitamin }, match: { in: 'synonym' } })
+    expect(findNamed(rows, 'Nothing of the kind')).toBeNull()
+    // A part of a name is another name.
+    expect(await known('olive', 'vitamin')).toEqual([])
+  })
+
+  it('that several ingredients have are left to a person', () => {
+    const both = ['One Oil', 'Other Oil'].map((inciName) => ({
+      ...{ inciName, synonyms: ['House oil'], supplierName: '' },
+    }))
+    expect(findNamed(both, 'house oil')).toBeNull()
+    expect(findNamed(both, 'other oil')?.row.inciName).toBe('Other Oil')
+  })
 })

@@ -70,10 +70,9 @@ type Making = { sizeG: number; yieldG: number; typeShown: string; conductivity: 
 
 /** From the formula's page to a released batch, each line weighed as asked and each step done as prescribed. */
 export async function makeBatch(page: Page, hand: Hand, recipe: Recipe, making: Making): Promise<string> {
-  await hand.press(page.getByRole('button', { name: 'Make a batch' }))
-  const dialog = page.getByRole('dialog')
-  await hand.type(dialog.getByLabel('Size'), String(making.sizeG))
-  await hand.press(dialog.getByRole('button', { name: 'Make the batch' }))
+  await hand.press(page.getByRole('link', { name: 'Make a batch' }))
+  await hand.type(page.getByLabel('Batch size'), String(making.sizeG))
+  await hand.press(page.getByRole('button', { name: /^Make [\d\u2009]+ g$/ }))
   await expect(page).toHaveURL(new RegExp(`/batches/${recipe.code}-\\d$`))
   return keepBatch(page, hand, recipe, making)
 }

@@ -5,7 +5,9 @@ import { newId } from '@/lib/db/id'
 import { totalSentence } from '@/lib/formula/rules/finding'
 import { wholeThousandths } from '@/lib/formula/rules/totals'
 import { refuse } from '@/lib/http/errors'
-import { targetGrams, usualTolerancePercent } from '../rules/weighing'
+import { usualWeighingTolerancePercent } from '@/lib/lab/rules'
+import type { ProtocolPlan } from '@/lib/protocol/schema'
+import { targetGrams } from '../rules/weighing'
 import type { CreateBatchInput } from '../schema'
 
 /**
@@ -48,10 +50,15 @@ export async function createBatch(trx: Trx, actor: Actor, input: CreateBatchInpu
   }
   const code = `${formula.code}-${formula.batches + 1}`
   const { id, formulaVersionId, sizeG, note } = input
-  const tolerancePercent = input.tolerancePercent ?? formula.labTolerancePercent ?? usualTolerancePercent
+  const protocol = await narrowestOf(trx, input.protocolVersionIds)
+  const usual = formula.labTolerancePercent ?? usualWeighingTolerancePercent
+  const tolerancePercent = input.tolerancePercent ?? protocol?.tolerancePercent ?? usual
   await trx
     .insertInto('batch')
-    .values({ id, code, formulaVersionId, sizeG, tolerancePercent, note, createdBy: actor.personId })
+    .values({
+      ...{ id, code, formulaVersionId, sizeG, tolerancePercent, note, createdBy: actor.personId },
+      protocolVersionId: protocol?.id ?? null,
+    })
     .execute()
   const weighings = lines.map((line, position) => ({
     id: newId(),
@@ -95,6 +102,28 @@ async function lockFormula(trx: Trx, formulaVersionId: string) {
     .where('formulaVersion.formulaId', '=', row.id)
     .executeTakeFirstOrThrow()
   return { ...row, batches: count.batches }
+}
+
+/** Of the protocols it is sized for the one whose tolerance is narrowest, else the first of them. */
+async function narrowestOf(trx: Trx, ids: readonly string[]) {
+  if (!ids.length) return null
+  const found = await trx
+    .selectFrom('protocolVersion')
+    .select('id')
+    .select((eb) => eb.ref('plan').$castTo<ProtocolPlan>().as('plan'))
+    .where('id', 'in', ids)
+    .execute()
+  const asked = ids.flatMap((id) => {
+    const plan = found.find((one) => one.id === id)?.plan
+    return plan ? [{ id, tolerancePercent: plan.weighingTolerancePercent ?? null }] : []
+  })
+  if (asked.length < new Set(ids).size) {
+    throw refuse.invalid('A protocol that this batch was sized for is not there. Choose again.', {
+      protocolVersionIds: 'Choose protocols of the list.',
+    })
+  }
+  const width = ({ tolerancePercent }: { tolerancePercent: number | null }) => tolerancePercent ?? Infinity
+  return asked.toSorted((a, b) => width(a) - width(b) || 0)[0] ?? null
 }
 
 function assertWhole(

@@ -1,4 +1,5 @@
 import { sql } from 'kysely'
+import { jsonArrayFrom } from 'kysely/helpers/postgres'
 import type { Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
 import type { EmulsionType } from '@/lib/formula/schema'
@@ -14,6 +15,8 @@ export async function getBatch(db: Db, actor: Actor, code: string) {
     .innerJoin('formulaVersion', 'formulaVersion.id', 'batch.formulaVersionId')
     .innerJoin('formula', 'formula.id', 'formulaVersion.formulaId')
     .innerJoin('person as maker', 'maker.id', 'batch.createdBy')
+    .leftJoin('protocolVersion', 'protocolVersion.id', 'batch.protocolVersionId')
+    .leftJoin('protocol', 'protocol.id', 'protocolVersion.protocolId')
     .leftJoin('person as tester', 'tester.id', 'batch.testedBy')
     .leftJoin('person as decider', 'decider.id', 'batch.decidedBy')
     .select([
@@ -43,11 +46,26 @@ export async function getBatch(db: Db, actor: Actor, code: string) {
       'formula.name as formulaName',
       'formula.emulsionType',
       'formulaVersion.number as versionNumber',
+      'protocol.code as protocolCode',
+      'protocol.name as protocolName',
+      sql<number | null>`(protocol_version.plan->>'weighingTolerancePercent')::numeric`.as(
+        'protocolTolerancePercent',
+      ),
       sql<number | null>`extract(epoch from app_now() - batch.made_at) / 3600`.as('restedHours'),
       sql<string>`(app_now() at time zone coalesce((select time_zone from lab), 'UTC'))::date::text`.as(
         'today',
       ),
     ])
+    .select((eb) =>
+      jsonArrayFrom(
+        eb
+          .selectFrom('batchPhoto')
+          .innerJoin('person', 'person.id', 'batchPhoto.takenBy')
+          .select(['batchPhoto.id', 'batchPhoto.note', 'batchPhoto.takenAt as at', 'person.initials as by'])
+          .whereRef('batchPhoto.batchId', '=', 'batch.id')
+          .orderBy('batchPhoto.takenAt'),
+      ).as('photos'),
+    )
     .where('batch.code', '=', code)
     .executeTakeFirst()
   if (!batch) throw refuse.notFound(`There is no batch ${code}. Look for it in the list of batches.`)

@@ -1,5 +1,6 @@
 import type { Db } from '@/lib/db/client'
-import type { BatchAttribute, BatchReadingDetail, ReadingMoment } from '../schema'
+import type { KeptDetail } from '../rules/readings'
+import type { BatchAttribute, ReadingMoment } from '../schema'
 
 /** Every portion of a batch's lines, corrected ones too, in the order in which they were kept. */
 export function listPortions(db: Db, batchId: string) {
@@ -110,9 +111,7 @@ export async function listBatchReadings(db: Db, batchIds: readonly string[]) {
       'batchReading.readAt',
       'person.initials as by',
     ])
-    .select((eb) =>
-      eb.ref('batchReading.detail').$castTo<BatchReadingDetail & { rcf?: number }>().as('detail'),
-    )
+    .select((eb) => eb.ref('batchReading.detail').$castTo<KeptDetail>().as('detail'))
     .where('batchReading.batchId', 'in', batchIds)
     .orderBy('batchReading.attribute')
     .orderBy('batchReading.replicate')

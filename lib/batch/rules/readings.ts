@@ -2,6 +2,7 @@ import { readDecimal } from '@/lib/number/rules'
 import { centrifuge } from '@/lib/science/centrifuge'
 import { mean } from '@/lib/science/mean'
 import { viscosity, viscosityFactor } from '@/lib/science/viscosity'
+import { dropsOf, dropSizes, readDrops, type Drops } from './droplets'
 import type { BatchAttribute, BatchReadingDetail } from '../schema'
 
 export const measured: Record<
@@ -13,12 +14,14 @@ export const measured: Record<
   viscosity: { label: 'Viscosity', unit: 'mPa·s', possible: { lower: 1, upper: 100_000_000 } },
   density: { label: 'Density', unit: 'g/mL', possible: { lower: 0.2, upper: 2 } },
   centrifuge: { label: 'Centrifuge', unit: '% separated', possible: { lower: 0, upper: 100 } },
-  droplets: { label: 'Droplets', unit: 'micrometres', possible: { lower: 0.01, upper: 2000 } },
+  droplets: { label: 'Droplets', unit: 'micrometres', possible: dropSizes },
   temperature: { label: 'Temperature', unit: '°C', possible: { lower: -50, upper: 200 } },
 }
 
 type Typed = { attribute: BatchAttribute; typed: string; detail: BatchReadingDetail }
-export type BatchValue = { value: number | null; detail: BatchReadingDetail & { rcf?: number } }
+/** What the server makes of the details. */
+export type KeptDetail = BatchReadingDetail & { rcf?: number; drops?: Drops }
+export type BatchValue = { value: number | null; detail: KeptDetail }
 export type NoValue = { field: string; sentence: string }
 
 /** The value of what was typed, or why it is none and at which field. */
@@ -28,6 +31,7 @@ export function batchValue(
 ): BatchValue | NoValue {
   const { label, unit, possible } = measured[attribute]
   if (possible === null) return { value: null, detail }
+  if (attribute === 'droplets') return fromDrops(typed, detail)
   const number = readDecimal(typed)
   if (number === null) {
     return { field: 'typed', sentence: `${label} is a number, with one comma or point. Type it again.` }
@@ -44,6 +48,15 @@ export function batchValue(
   if (!minutes) return { field: 'detail.minutes', sentence: 'Give the minutes that it ran.' }
   const { rcf } = centrifuge({ rpm, radiusMm })
   return { value: number, detail: { ...detail, rcf } }
+}
+
+/** The Sauter mean of what was counted: what a film's thickness goes by. */
+function fromDrops(typed: string, detail: BatchReadingDetail): BatchValue | NoValue {
+  const counted = readDrops(typed)
+  if (typeof counted === 'string') return { field: 'typed', sentence: counted }
+  const drops = dropsOf(counted)
+  if (!drops) return { value: counted.diametersUm[0] ?? null, detail }
+  return { value: Number(drops.d32.toPrecision(12)), detail: { ...detail, drops } }
 }
 
 function fromTorque(

@@ -3,9 +3,7 @@ import { dayText } from '@/lib/report/rules'
 import { netGrams, totalGrams } from '@/lib/science/making'
 import { percentOf } from '@/lib/science/percent'
 
-/** [practice] A line is weighed right within this much of its target, unless the lab sets another … */
-export const usualTolerancePercent = 1
-/** … and never finer than a balance of 0.01 g shows. */
+/** However narrow the tolerance, it is never finer than a balance of 0.01 g shows. */
 export const balanceStepG = 0.01
 
 export function targetGrams(sizeG: number, percentThousandths: number): number {
@@ -16,13 +14,28 @@ export function toleranceGrams(targetG: number, tolerancePercent: number): numbe
   return Math.max((targetG * tolerancePercent) / 100, balanceStepG)
 }
 
+type Tolerance = {
+  tolerancePercent: number
+  protocolName: string | null
+  protocolTolerancePercent: number | null
+}
+
+/** "1 %", or "0.5 % as Prototype screen asks" where it is the protocol's. */
+export function toleranceWords(batch: Tolerance): string {
+  const { tolerancePercent, protocolName, protocolTolerancePercent } = batch
+  const isProtocols = protocolName !== null && protocolTolerancePercent === tolerancePercent
+  return `${tolerancePercent} %${isProtocols ? ` as ${protocolName} asks` : ''}`
+}
+
 export type Weighed = {
   differenceG: number
   /** Null where the target is 0. */
   differencePercent: number | null
   isWithin: boolean
-  /** "0.38 g to go", "0.41 g too much", "Within what is allowed". */
+  /** "0.38 g to go", "0.41 g too much", "Within what is allowed": while it is poured. */
   words: string
+  /** "inside", "0.38 g short", "0.41 g over": of what was kept. */
+  told: string
 }
 
 export function weighed(targetG: number, actualG: number, tolerancePercent: number): Weighed {
@@ -35,6 +48,7 @@ export function weighed(targetG: number, actualG: number, tolerancePercent: numb
     differenceG,
     differencePercent: targetG > 0 ? percentOf(differenceG, targetG) : null,
     isWithin,
+    told: isWithin ? 'inside' : `${off} g ${differenceG < 0 ? 'short' : 'over'}`,
     words: isWithin ? 'Within what is allowed' : `${off} g ${differenceG < 0 ? 'to go' : 'too much'}`,
   }
 }

@@ -107,6 +107,7 @@ const spun = {
 const creamInitial = [
   { attribute: 'look', typed: 'White, glossy, stands in a peak' },
   { attribute: 'ph', typed: '5.50', detail: { path: 'extract', ratio: '1 : 9' } },
+  { attribute: 'droplets', typed: '1.6 × 14; 2.2 × 31; 2.8 × 38; 3.4 × 24; 4.1 × 11; 5.0 × 4' },
   spun,
 ]
 const lotionInitial = [

@@ -3,9 +3,10 @@ import type { Db } from '@/lib/db/client'
 import { getGround } from '@/lib/formula-answer/queries'
 import { refuse } from '@/lib/http/errors'
 import type { EmulsionType } from '../schema'
+import { findDrops } from './find-drops'
 import { listFamilies } from './list-families'
 
-/** One version of a formula (the latest unless a number is given) with what its page shows: ten statements. */
+/** One version of a formula (the latest unless a number is given) with what its page shows: eleven statements. */
 export async function getFormula(db: Db, _actor: Actor, code: string, number?: number) {
   const versions = await db
     .selectFrom('formula')
@@ -41,11 +42,12 @@ export async function getFormula(db: Db, _actor: Actor, code: string, number?: n
     )
   }
   const before = versions.filter((version) => version.number < shown.number).at(-1)
-  const [lines, steps, batches, families, ground] = await Promise.all([
+  const [lines, steps, batches, families, drops, ground] = await Promise.all([
     listLines(db, before ? [shown.id, before.id] : [shown.id]),
     listSteps(db, shown.id),
     listBatchesMade(db, shown.formulaId),
     listFamilies(db, shown.familyOfVersionId, shown.formulaId),
+    findDrops(db, shown.formulaId),
     getGround(db, { formulaId: shown.formulaId, versionId: shown.id, number: shown.number }),
   ])
   return {
@@ -65,6 +67,8 @@ export async function getFormula(db: Db, _actor: Actor, code: string, number?: n
     createdAt: shown.createdAt,
     batches,
     families,
+    /** Of the last batch whose drops were measured. */
+    drops,
     ground,
     lines: lines.filter((line) => line.formulaVersionId === shown.id),
     steps,

@@ -136,6 +136,7 @@ export async function listLatestVersions(db: Db, _actor: Actor) {
     .innerJoin('formulaFigure as figure', 'figure.formulaId', 'formula.id')
     .innerJoin('formulaVersion as latest', 'latest.id', 'figure.formulaVersionId')
     .select(['formula.code', 'formula.name', 'latest.id as versionId', 'latest.number as versionNumber'])
+    .select('latest.state')
     .orderBy(sql`formula.code collate natural_order`)
     .execute()
 }

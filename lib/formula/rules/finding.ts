@@ -1,3 +1,5 @@
+import { grouped } from '@/lib/number/rules'
+import { filmThickness } from '@/lib/science/film'
 import type { EmulsionType } from '../schema'
 import type { FormulaCheck } from './checks'
 import { percentText } from './numbers'
@@ -10,6 +12,8 @@ export function formulaFinding(
   type: EmulsionType,
   totals: FormulaTotals,
   checks: readonly FormulaCheck[],
+  /** Sauter mean of the drops, where a batch's were measured. */
+  diameterUm: number | null = null,
 ): Finding {
   const inside = innerWord(type)
   const volume = totals.internalVolumePercent
@@ -26,9 +30,25 @@ export function formulaFinding(
     : 'Up to 74.0 % round drops of one size fit.'
   return {
     strong: `${volume.toFixed(1)} %`,
-    rest: ` ${inside} inside, ${totals.isHighInternalPhase ? 'past the closest packing' : 'drops with room between'}`,
+    rest: ` ${inside} inside, ${packedWords(type, totals, diameterUm)}`,
     sentence: `By volume. ${answered} of ${checks.length} questions are answered; ${totalSentence(totals)}. ${packing}`,
   }
+}
+
+function packedWords(type: EmulsionType, totals: FormulaTotals, diameterUm: number | null): string {
+  if (!totals.isHighInternalPhase) return 'drops with room between'
+  const film = filmText(totals, diameterUm)
+  return film
+    ? `held apart by ${film} of ${type === 'oil-in-water' ? 'water' : 'oil'}`
+    : 'past the closest packing'
+}
+
+/** "180 nm": the mean film between packed drops, where their size is known. */
+export function filmText(totals: FormulaTotals, diameterUm: number | null): string | null {
+  const { internalVolumePercent } = totals
+  if (!totals.isHighInternalPhase || internalVolumePercent === null || diameterUm === null) return null
+  const { filmNm } = filmThickness({ internalVolumePercent, diameterUm })
+  return `${grouped(Number(filmNm.toPrecision(2)), 0)} nm`
 }
 
 export function innerWord(type: EmulsionType): 'water' | 'oil' {

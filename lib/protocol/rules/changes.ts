@@ -80,6 +80,8 @@ function attributeChanges(before: ProtocolPlan, after: ProtocolPlan): string[] {
 }
 
 function wholeChanges(before: ProtocolPlan, after: ProtocolPlan): string[] {
+  const weighing = ({ weighingTolerancePercent: percent }: ProtocolPlan) =>
+    percent === undefined ? undefined : `${percent} %`
   const outside = ({ setAside = [] }: ProtocolPlan) =>
     setAside.map(({ what, jars }) => `${jars} for ${what}`).join(', ')
   const names = ({ matrixing }: ProtocolPlan) =>
@@ -91,6 +93,7 @@ function wholeChanges(before: ProtocolPlan, after: ProtocolPlan): string[] {
     ...turned('Fill', `${before.fillG} g`, `${after.fillG} g`),
     ...turned('Fill height', `${before.fillHeightMm} mm`, `${after.fillHeightMm} mm`),
     ...turned('Loss', `${before.lossPercent} %`, `${after.lossPercent} %`),
+    ...turned('Weighing tolerance', weighing(before), weighing(after)),
     ...turned('Rest', `${before.restHours} h`, `${after.restHours} h`),
     ...turned('Initial jars', before.initialJars, after.initialJars),
     ...turned('Retains', before.retains, after.retains),

@@ -24,6 +24,21 @@ export const phaseFractionMethod: Method = {
   topic: 'phase-fraction',
 }
 
+export const filmMethod: Method = {
+  name: 'Film between drops',
+  formula: [
+    'Diameter × (1 − inside) ÷ (3 × inside), inside as a share of the volume.',
+    'The interface of drops of one mean diameter D[3,2] is 6 × inside ÷ diameter in a volume; two drops share each film.',
+    'Taken for granted: all that is outside lies in even films between drops that touch. Corners hold more of it, so the films themselves are thinner.',
+  ],
+  inputs: [
+    { key: 'volume', says: 'inside, by volume', unit: '%' },
+    { key: 'diameterUm', says: 'drops, D[3,2]', unit: 'micrometres' },
+  ],
+  sources: [{ text: 'Geometry of interface and volume', mark: 'handbook' }],
+  topic: null,
+}
+
 export const dropletsMethod: Method = {
   name: 'Drop sizes',
   formula: [

@@ -36,6 +36,7 @@ export default async function BatchPage({ params, searchParams }: Props) {
         personId={actor.personId}
         part={parts.find((part) => part === query['part']) ?? null}
         mayWrite={may(actor, 'batch.write')}
+        mayStart={may(actor, 'study.write')}
       />
     </SWRConfig>
   )

@@ -1,20 +1,24 @@
 'use client'
 
 import { useCallback, useEffect, useState, useSyncExternalStore } from 'react'
-import { listKept, noKept, onKeptChange, sendKept } from '@/components/bench/outbox'
+import type { Outbox, Waiting } from './outbox'
 
-/** What is kept on this tablet, whether the server is reached, and sending by itself when it is again. */
-export function useOutbox(personId: string, onSent: () => void) {
-  const all = useSyncExternalStore(onKeptChange, listKept, noKept)
+/** What this person keeps on this device, whether the server is reached, and sending by itself when it is again. */
+export function useOutbox<Item extends Waiting>(
+  outbox: Outbox<Item>,
+  personId: string,
+  onSent: () => unknown,
+) {
+  const all = useSyncExternalStore(outbox.onChange, outbox.list, outbox.none)
   const [isOnline, setOnline] = useState(true)
-  const kept = all.filter((k) => k.personId === personId)
-  const waiting = kept.filter((k) => k.refused === null).length
+  const kept = all.filter((item) => item.personId === personId)
+  const waiting = kept.filter((item) => item.refused === null).length
 
   const flush = useCallback(async () => {
-    const { sent, isReached } = await sendKept(personId)
+    const { sent, isReached } = await outbox.flush(personId)
     setOnline(isReached && navigator.onLine)
-    if (sent.length > 0) onSent()
-  }, [personId, onSent])
+    if (sent > 0) await onSent()
+  }, [outbox, personId, onSent])
 
   useEffect(() => {
     const up = () => void flush()
