@@ -12,6 +12,7 @@ import type { StationRow } from '@/lib/station/queries/stations'
 import { moveEffects, targetsFor, type SeriesPlace } from '@/lib/station/rules/moves'
 import { capacityOf } from '@/lib/station/rules/places'
 import { stationKeys } from '@/lib/station/schema'
+import { degrees } from '@/lib/study/rules/finding'
 import { counted } from '@/lib/study/rules/words'
 
 export type Moved = { count: number; toName: string; studies: string[] }
@@ -100,7 +101,7 @@ export function MoveForm(props: Props) {
           error={fields['toStationId'] ?? (isShort ? shortOf(target, chosen.length) : undefined)}
           options={targets.map(({ station: one, keeps, hasRoom }) => ({
             value: one.id,
-            label: `${one.name}, ${counted(one.free, 'place')} free${hasRoom ? (keeps ? ', as asked' : ', other conditions') : ', not enough'}`,
+            label: `${one.name}${one.temperatureC === null ? '' : `, ${degrees(one.temperatureC)}`}, ${counted(one.free, 'place')} free${hasRoom ? (keeps ? ', as asked' : ', other conditions') : ', not enough'}`,
           }))}
           wrap="min-w-[260px] flex-1"
         />

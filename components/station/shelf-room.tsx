@@ -155,7 +155,7 @@ function NewLabels({ moved }: { moved: Moved }) {
       {moved.studies.map((code, index) => (
         <span key={code}>
           {index > 0 ? (index === moved.studies.length - 1 ? ' and ' : ', ') : ''}
-          <Link href={`/studies/${code}/labels`} className="underline underline-offset-4">
+          <Link href={`/studies/${code}/labels?of=moved`} className="underline underline-offset-4">
             {code}
           </Link>
         </span>

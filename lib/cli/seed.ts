@@ -10,6 +10,7 @@ import { batchesOf, layGround, tell, tellFinished } from './seed/finished'
 import { markFilled } from './seed/people'
 import { fillPhotos } from './seed/photos'
 import { answerFlags } from './seed/flags'
+import { tellStations } from './seed/stations'
 import { answerFormulas } from './seed/answers'
 
 if (process.argv.includes('--people')) {
@@ -99,7 +100,7 @@ async function fill(open: Omit<Filling, 'people'>): Promise<void> {
     },
     say,
   )
-  await tell(
+  const second = await tell(
     ground,
     {
       title: 'Silicone cream SI82, second batch',
@@ -113,6 +114,7 @@ async function fill(open: Omit<Filling, 'people'>): Promise<void> {
     say,
   )
   await amendStory(filling, apart.id, apart.code)
+  await tellStations(filling, ground.places, second.code)
   console.log('photos')
   await fillPhotos(filling, apart.id)
   console.log('questions, flags and cases')

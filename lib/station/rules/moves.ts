@@ -143,7 +143,7 @@ export function placeDoubts(
   ]
 }
 
-/** Stations with room first, of these the ones that keep what the jars have now; the fullest last. */
+/** Stations with room first, of these the ones that keep what the jars are to have, then the nearest in temperature. */
 export function targetsFor<T extends Target & { isActive: boolean; free: number }>(
   jars: readonly MovableJar[],
   fromId: string,
@@ -160,6 +160,12 @@ export function targetsFor<T extends Target & { isActive: boolean; free: number 
       (a, b) =>
         Number(b.hasRoom) - Number(a.hasRoom) ||
         Number(b.keeps) - Number(a.keeps) ||
+        awayFrom(jars, a.station) - awayFrom(jars, b.station) ||
         b.station.free - a.station.free,
     )
+}
+
+function awayFrom([jar]: readonly MovableJar[], { temperatureC }: Target): number {
+  if (jar?.temperatureC == null || temperatureC === null) return Number.MAX_VALUE
+  return Math.abs(jar.temperatureC - temperatureC)
 }
