@@ -2,7 +2,8 @@ import type { FlagPage } from '@/lib/flag/queries/one'
 import { addDays, spokenDay } from '@/lib/study/rules/calendar'
 import { attributeName, inSentence, type Phrase } from '@/lib/study/rules/finding'
 import { listed, shownWithUnit } from '@/lib/study/rules/words'
-import { flaggedValue, instrumentNoun, isDownwards, stationText } from './flag-words'
+import { stationText } from '@/lib/flag/rules/list'
+import { flaggedValue, instrumentNoun, isDownwards } from './flag-words'
 import { instrumentVerdict } from './instrument-verdict'
 
 /** What happened, where, and how sure it is: the finding that someone must answer. */

@@ -1,83 +1,75 @@
 'use client'
 
 import Link from 'next/link'
-import { useRouter } from 'next/navigation'
-import useSWR from 'swr'
 import { FlagMark } from '@/components/marks/flag-mark'
 import { heatWeight } from '@/components/marks/heat'
 import { StandingMark } from '@/components/marks/standing-mark'
+import { ListLedger } from '@/components/list/list-ledger'
+import { ListTools } from '@/components/list/list-tools'
 import { Empty } from '@/components/ui/empty'
 import { Heading } from '@/components/ui/heading'
-import { Ledger, type LedgerColumn } from '@/components/ui/ledger'
 import { LinkButton } from '@/components/ui/link-button'
-import { Select } from '@/components/ui/select'
-import type { FlagLine } from '@/lib/flag/queries/list'
-import { flagKeys, flagStates } from '@/lib/flag/schema'
-import { fetcher } from '@/lib/http/fetcher'
+import type { FlagCounts, FlagLine, FlagsPage } from '@/lib/flag/queries/list'
+import { flagList, stationText } from '@/lib/flag/rules/list'
+import { flagStates } from '@/lib/flag/schema'
+import { listAddress } from '@/lib/list/rules'
+import type { ListQuery } from '@/lib/list/schema'
 import { dayIn, spokenDay } from '@/lib/study/rules/calendar'
 import { capital, counted } from '@/lib/study/rules/words'
-import { flagsAddress, type ShownFlags } from './flag-filter'
-import { levelStanding, levelWord, stationText, whoIsNext, whole } from './flag-words'
+import { levelStanding, levelWord, whoIsNext, whole } from './flag-words'
 import type { FlagRights } from './rights'
 
-type Props = { shown: ShownFlags; rights: FlagRights; timeZone: string }
+type Props = { page: FlagsPage; query: ListQuery; rights: FlagRights; timeZone: string }
 
 /** All flags as a ledger: what wants an answer first, and the last column says who is next. */
-export function FlagList({ shown, rights, timeZone }: Props) {
-  const { data: all } = useSWR<FlagLine[]>(flagKeys.list, fetcher)
-  const router = useRouter()
-  if (!all) return null
-  const flags = shown.study ? all.filter((flag) => flag.studyCode === shown.study) : all
-  const rows = flags.filter((flag) => flag.state === shown.state)
-  const studies = [...new Map(all.map((flag) => [flag.studyCode, flag.studyTitle]))].toSorted(([a], [b]) =>
-    b.localeCompare(a),
-  )
+export function FlagList({ page, query, rights, timeZone }: Props) {
+  const { counts, choices, total } = page
+  const { state, study } = query.filters
   return (
     <>
       <Heading
-        crumb={
-          shown.study ? `Flags of study ${shown.study}, gravest first` : 'Flags of every study, gravest first'
-        }
-        headline={<Headline flags={flags} />}
-        sentence={sentence(flags, timeZone)}
+        crumb={study ? `Flags of study ${study}, gravest first` : 'Flags of every study, gravest first'}
+        headline={<Headline counts={counts} />}
+        sentence={sentence(counts, timeZone)}
         acts={<LinkButton href="/flags/trust">How far to trust a flag</LinkButton>}
         tabsLabel="Open, answered and closed flags"
-        tabs={flagStates.map((state) => ({
-          href: flagsAddress({ ...shown, state }),
-          label: capital(state),
-          count: flags.filter((flag) => flag.state === state).length,
-          isHere: shown.state === state,
+        tabs={flagStates.map((one) => ({
+          href: listAddress('/flags', flagList, query, { filters: { state: one } }),
+          label: capital(one),
+          count: counts[one],
+          isHere: state === one,
         }))}
       />
-      <form data-screen-only className="mt-4" onSubmit={(event) => event.preventDefault()}>
-        <Select
-          label="Study"
-          hideLabel
-          value={shown.study ?? ''}
-          empty="Study: any"
-          options={studies.map(([code, title]) => ({ value: code, label: `${code} ${title}` }))}
-          onPick={(study) =>
-            router.replace(flagsAddress({ ...shown, study: study || null }), { scroll: false })
-          }
-          wrap="w-full sm:w-[320px]"
+      <div className="mt-4">
+        <ListTools
+          list={flagList}
+          path="/flags"
+          query={query}
+          choices={choices}
+          without={['state']}
+          searchLabel="Find a flag"
+          placeholder="Number, words, study, batch"
+          total={total}
         />
-      </form>
+      </div>
       <div className="mt-2">
-        <Ledger
-          caption={`${capital(shown.state)} flags`}
-          rows={rows}
+        <ListLedger
+          list={flagList}
+          path="/flags"
+          query={query}
+          page={page}
+          caption={`${capital(state ?? '')} flags`}
+          timeZone={timeZone}
           rowKey={(flag) => String(flag.number)}
-          columns={columns(rights, timeZone)}
-          empty={<NoFlag shown={shown} />}
+          cells={cellsFor(rights, timeZone)}
+          empty={<NoFlag query={query} />}
         />
       </div>
     </>
   )
 }
 
-function Headline({ flags }: { flags: FlagLine[] }) {
-  const open = flags.filter((flag) => flag.state === 'open').length
-  const answered = flags.filter((flag) => flag.state === 'answered').length
+function Headline({ counts: { open, answered } }: { counts: FlagCounts }) {
   if (open > 0) {
     return (
       <>
@@ -95,42 +87,37 @@ function Headline({ flags }: { flags: FlagLine[] }) {
   return <>No flag wants an answer</>
 }
 
-function sentence(flags: FlagLine[], timeZone: string): string {
-  const open = flags.filter((flag) => flag.state === 'open')
-  const of = (level: string) => open.filter((flag) => flag.level === level).length
-  const [out, leaning, doubts] = [of('out'), of('leaning'), of('doubt')]
+function sentence(counts: FlagCounts, timeZone: string): string {
+  const { open, answered: waiting, closed, out, leaning, doubts, oldest } = counts
   const parts = [
     out > 0 ? `${counted(out, 'series', 'series')} out` : '',
     leaning > 0 ? `${leaning === 1 ? 'one' : counted(leaning, '', '').trim()} leaning` : '',
     doubts > 0 ? counted(doubts, 'doubt') : '',
   ].filter(Boolean)
-  const oldest = open.map((flag) => flag.raisedAt).toSorted()[0]
-  const waiting = flags.filter((flag) => flag.state === 'answered').length
   return [
     parts.length > 0 ? `${capital(parts.join(', '))}.` : '',
     oldest ? `The oldest waits since ${spokenDay(dayIn(timeZone, oldest))}.` : '',
-    open.length > 0 && waiting > 0
+    open > 0 && waiting > 0
       ? `${capital(counted(waiting, 'answer'))} ${waiting === 1 ? 'waits' : 'wait'} for QA.`
       : '',
-    flags.length === 0 ? 'The rules raise one when a reading or a trend needs somebody’s word.' : '',
+    open + waiting + closed === 0
+      ? 'The rules raise one when a reading or a trend needs somebody’s word.'
+      : '',
   ]
     .filter(Boolean)
     .join(' ')
 }
 
-function columns(rights: FlagRights, timeZone: string): LedgerColumn<FlagLine>[] {
-  return [
-    {
-      key: 'number',
-      title: 'flag',
+function cellsFor(rights: FlagRights, timeZone: string): Parameters<typeof ListLedger<FlagLine>>[0]['cells'] {
+  return {
+    number: {
       width: '52px',
+      align: 'left',
       cell: (flag) => (
         <FlagMark number={flag.number} solid={flag.level === 'out'} title={`Flag ${flag.number}`} />
       ),
     },
-    {
-      key: 'sentence',
-      title: 'what it says',
+    sentence: {
       cell: (flag) => (
         <Link
           href={`/flags/${flag.number}`}
@@ -144,9 +131,7 @@ function columns(rights: FlagRights, timeZone: string): LedgerColumn<FlagLine>[]
         </Link>
       ),
     },
-    {
-      key: 'study',
-      title: 'study',
+    study: {
       from: 'tablet',
       width: '120px',
       cell: (flag) => (
@@ -155,9 +140,7 @@ function columns(rights: FlagRights, timeZone: string): LedgerColumn<FlagLine>[]
         </span>
       ),
     },
-    {
-      key: 'station',
-      title: 'station',
+    station: {
       from: 'desk',
       width: '96px',
       cell: (flag) => (
@@ -171,9 +154,7 @@ function columns(rights: FlagRights, timeZone: string): LedgerColumn<FlagLine>[]
         </span>
       ),
     },
-    {
-      key: 'raised',
-      title: 'raised',
+    raised: {
       from: 'desk',
       width: '120px',
       cell: (flag) => (
@@ -182,16 +163,8 @@ function columns(rights: FlagRights, timeZone: string): LedgerColumn<FlagLine>[]
         </span>
       ),
     },
-    {
-      key: 'level',
-      title: 'level',
-      width: '124px',
-      from: 'tablet',
-      cell: (flag) => <Level flag={flag} />,
-    },
-    {
-      key: 'next',
-      title: 'who is next',
+    level: { width: '124px', from: 'tablet', cell: (flag) => <Level flag={flag} /> },
+    next: {
       from: 'desk',
       width: '190px',
       cell: (flag) => {
@@ -199,7 +172,7 @@ function columns(rights: FlagRights, timeZone: string): LedgerColumn<FlagLine>[]
         return <span className={`whitespace-nowrap ${isMine ? 'font-700' : ''}`}>{text}</span>
       },
     },
-  ]
+  }
 }
 
 function Level({ flag }: { flag: FlagLine }) {
@@ -213,12 +186,15 @@ function Level({ flag }: { flag: FlagLine }) {
   )
 }
 
-function NoFlag({ shown }: { shown: ShownFlags }) {
-  const of = shown.study ? ` of study ${shown.study}` : ''
-  const act = shown.study ? (
-    <LinkButton href={flagsAddress({ ...shown, study: null })}>Show every study</LinkButton>
+function NoFlag({ query }: { query: ListQuery }) {
+  const { state, ...others } = query.filters
+  const of = others['study'] ? ` of study ${others['study']}` : ''
+  const isSought = query.q !== '' || Object.values(others).some((value) => value !== '')
+  const act = isSought ? (
+    <LinkButton href={state === 'open' ? '/flags' : `/flags?state=${state}`}>Show every flag</LinkButton>
   ) : undefined
-  if (shown.state === 'answered') {
+  if (query.q) return <Empty title={`No ${state} flag${of} has ${query.q}.`} act={act} />
+  if (state === 'answered') {
     return (
       <Empty
         title={`No answer${of} waits`}
@@ -227,7 +203,7 @@ function NoFlag({ shown }: { shown: ShownFlags }) {
       />
     )
   }
-  if (shown.state === 'closed') return <Empty title={`No flag${of} is closed yet`} act={act} />
+  if (state === 'closed') return <Empty title={`No flag${of} is closed yet`} act={act} />
   return (
     <Empty
       title={`No flag${of} wants an answer`}

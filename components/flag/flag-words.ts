@@ -1,8 +1,7 @@
 import type { FlagLine } from '@/lib/flag/queries/list'
 import type { FlagPage } from '@/lib/flag/queries/one'
-import { needsQuality } from '@/lib/flag/rules/closing'
+import { nextWords } from '@/lib/flag/rules/list'
 import type { FlagCause } from '@/lib/flag/schema'
-import { degrees } from '@/lib/study/rules/finding'
 import type { AttributeKey } from '@/lib/reading/schema/attributes'
 import type { Standing } from '@/components/marks/standing-shapes'
 
@@ -33,30 +32,13 @@ export function levelStanding({ level }: Pick<FlagLine, 'level'>): Standing | nu
   return level === 'doubt' ? 'untold' : null
 }
 
-export function stationText(flag: {
-  temperatureC: number | null
-  isFreezeThaw: boolean | null
-  stationName: string | null
-}): string {
-  if (flag.isFreezeThaw) return 'freeze-thaw'
-  if (flag.temperatureC !== null) return degrees(flag.temperatureC)
-  return flag.stationName ?? 'every station'
-}
-
 /** Who has the next word about a flag, and whether that is one of this person's roles. */
 export function whoIsNext(
   flag: Pick<FlagLine, 'state' | 'level' | 'voice' | 'closedBy' | 'closedAt' | 'answeredBy'>,
   rights: { mayAnswer: boolean; mayCloseOut: boolean },
 ): { text: string; isMine: boolean } {
-  if (flag.state === 'closed') {
-    return { text: flag.answeredBy ? `closed by ${flag.closedBy}` : 'closed by itself', isMine: false }
-  }
-  if (flag.state === 'answered') return { text: 'QA closes it', isMine: rights.mayCloseOut }
-  if (flag.level === 'doubt') return { text: 'a repeat, or the formulator', isMine: rights.mayAnswer }
-  return {
-    text: needsQuality(flag) ? 'formulator, then QA' : 'formulator answers',
-    isMine: rights.mayAnswer,
-  }
+  const isMine = flag.state === 'answered' ? rights.mayCloseOut : flag.state === 'open' && rights.mayAnswer
+  return { text: nextWords(flag), isMine }
 }
 
 /** The noun for what an attribute is read with. */

@@ -27,7 +27,7 @@ export function IngredientPast({ id, timeZone }: { id: string; timeZone: string 
         <p>
           {lastChange.operation === 'insert' ? 'Added' : 'Changed last'} by {lastChange.by},{' '}
           {spokenDay(dayIn(timeZone, lastChange.at))}.{' '}
-          <Link href="/trail?table=ingredient">Every change of the book</Link>
+          <Link href="/trail?what=ingredient">Every change of the book</Link>
         </p>
       ) : null}
     </div>

@@ -3,21 +3,35 @@
 import Link from 'next/link'
 import { useRouter } from 'next/navigation'
 import { useState } from 'react'
+import { ListLedger } from '@/components/list/list-ledger'
+import { ListTools } from '@/components/list/list-tools'
 import { Button } from '@/components/ui/button'
 import { Empty } from '@/components/ui/empty'
 import { Heading } from '@/components/ui/heading'
-import { Ledger } from '@/components/ui/ledger'
-import type { InstrumentRow } from '@/lib/instrument/queries'
+import { LinkButton } from '@/components/ui/link-button'
+import type { InstrumentRow, InstrumentsPage } from '@/lib/instrument/queries'
+import { instrumentList } from '@/lib/instrument/rules'
+import type { ListQuery } from '@/lib/list/schema'
 import { isOverdue } from '@/lib/calibration/rules'
 import { spokenDay } from '@/lib/study/rules/calendar'
 import { capital, numberWord } from '@/lib/study/rules/words'
 import { CalibrationDialog } from './calibration-dialog'
 import { InstrumentDialog } from './instrument-dialog'
 
-type Props = { instruments: InstrumentRow[]; today: string; mayWrite: boolean; mayCalibrate: boolean }
+type Props = {
+  /** All of them, for the headline. */
+  instruments: InstrumentRow[]
+  page: InstrumentsPage
+  query: ListQuery
+  timeZone: string
+  today: string
+  mayWrite: boolean
+  mayCalibrate: boolean
+}
 
 /** Instruments with what their last calibration showed and until when it holds. */
-export function InstrumentList({ instruments, today, mayWrite, mayCalibrate }: Props) {
+export function InstrumentList(props: Props) {
+  const { instruments, page, query, timeZone, today, mayWrite, mayCalibrate } = props
   const router = useRouter()
   const [isAdding, setIsAdding] = useState(false)
   const [calibrated, setCalibrated] = useState<InstrumentRow | null>(null)
@@ -55,48 +69,28 @@ export function InstrumentList({ instruments, today, mayWrite, mayCalibrate }: P
         }
         acts={instruments.length > 0 ? add : undefined}
       />
-      <div className="mt-6">
-        <Ledger
+      <div className="mt-5">
+        <ListTools
+          list={instrumentList}
+          path="/instruments"
+          query={query}
+          searchLabel="Find an instrument"
+          placeholder="Code, name or kind"
+          total={page.total}
+        />
+      </div>
+      <div className="mt-3">
+        <ListLedger
+          list={instrumentList}
+          path="/instruments"
+          query={query}
+          page={page}
           caption="Instruments"
-          rows={instruments}
+          timeZone={timeZone}
           rowKey={(row) => row.id}
           isQuiet={(row) => !row.isActive}
-          empty={
-            <Empty
-              title="What the lab measures with"
-              sentence="pH meters, viscometers and balances: each with its calibrations and when the next is due."
-              act={add}
-            />
-          }
-          columns={[
-            {
-              key: 'code',
-              title: 'code',
-              width: '80px',
-              cell: (row) => (
-                <Link href={`/instruments/${row.id}`} className="font-650 underline-offset-4 hover:underline">
-                  {row.code}
-                </Link>
-              ),
-            },
-            { key: 'name', title: 'name', cell: (row) => row.name },
-            { key: 'kind', title: 'kind', from: 'tablet', cell: (row) => row.kind },
-            {
-              key: 'result',
-              title: 'last calibration',
-              cell: (row) => (
-                <span className={row.result === 'doubtful' ? 'font-650 text-alarm' : ''}>
-                  {row.result ?? 'none yet'}
-                </span>
-              ),
-            },
-            {
-              key: 'sentence',
-              title: 'what it showed',
-              from: 'desk',
-              cell: (row) => row.detail?.sentence ?? '',
-            },
-            { key: 'due', title: 'due', cell: (row) => <Due row={row} today={today} /> },
+          cells={cellsOn(today)}
+          after={[
             {
               key: 'act',
               title: <span className="sr-only">Acts</span>,
@@ -113,6 +107,20 @@ export function InstrumentList({ instruments, today, mayWrite, mayCalibrate }: P
                 ),
             },
           ]}
+          empty={
+            instruments.length > 0 ? (
+              <Empty
+                title={query.q ? `No instrument has ${query.q}.` : 'No instrument is of that kind.'}
+                act={<LinkButton href="/instruments">Show all instruments</LinkButton>}
+              />
+            ) : (
+              <Empty
+                title="What the lab measures with"
+                sentence="pH meters, viscometers and balances: each with its calibrations and when the next is due."
+                act={add}
+              />
+            )
+          }
         />
       </div>
       {isAdding ? (
@@ -132,6 +140,29 @@ export function InstrumentList({ instruments, today, mayWrite, mayCalibrate }: P
       ) : null}
     </>
   )
+}
+
+function cellsOn(today: string): Parameters<typeof ListLedger<InstrumentRow>>[0]['cells'] {
+  return {
+    code: {
+      width: '80px',
+      cell: (row) => (
+        <Link href={`/instruments/${row.id}`} className="font-650 underline-offset-4 hover:underline">
+          {row.code}
+        </Link>
+      ),
+    },
+    kind: { from: 'tablet' },
+    result: {
+      cell: (row) => (
+        <span className={row.result === 'doubtful' ? 'font-650 text-alarm' : ''}>
+          {row.result ?? 'none yet'}
+        </span>
+      ),
+    },
+    sentence: { from: 'desk' },
+    due: { cell: (row) => <Due row={row} today={today} /> },
+  }
 }
 
 function dueOf(row: InstrumentRow): { dueOn: string } | null {

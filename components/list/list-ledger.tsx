@@ -1,10 +1,11 @@
 import type { ReactNode } from 'react'
 import { Ledger, type LedgerColumn } from '@/components/ui/ledger'
 import type { ListPage } from '@/lib/list/queries/page'
-import { isAsAlways, listAddress } from '@/lib/list/rules'
+import { isAsAlways } from '@/lib/list/rules'
 import type { Column, List, ListQuery } from '@/lib/list/schema'
 import { dayIn, spokenDay } from '@/lib/study/rules/calendar'
 import { ListPages } from './list-pages'
+import { sortBy } from './sort-head'
 
 type Drawn<Row> = Omit<LedgerColumn<Row>, 'key' | 'title' | 'sort'>
 
@@ -62,14 +63,4 @@ function plain<Row>(column: Column<Row>, row: Row, timeZone: string): ReactNode 
 
 function dayOf(kind: 'day' | 'instant', value: string, timeZone: string): string {
   return kind === 'day' ? value : dayIn(timeZone, value)
-}
-
-function sortBy<Row>(list: List<Row>, path: string, query: ListQuery, { key }: Column<Row>) {
-  const isNow = query.sort === key
-  const first = key === list.sort ? list.order : 'asc'
-  const order = isNow ? (query.order === 'asc' ? ('desc' as const) : ('asc' as const)) : first
-  return {
-    href: listAddress(path, list, query, { sort: key, order }),
-    ...(isNow ? { now: query.order === 'asc' ? ('up' as const) : ('down' as const) } : {}),
-  }
 }

@@ -1,34 +1,42 @@
 'use client'
 
+import { useRouter } from 'next/navigation'
 import { useState } from 'react'
 import useSWR from 'swr'
+import { ListLedger } from '@/components/list/list-ledger'
+import { ListTools } from '@/components/list/list-tools'
 import { rolesInWords } from '@/components/shell/role-words'
 import { countWord } from '@/components/ui/count-word'
 import { Button } from '@/components/ui/button'
+import { Empty } from '@/components/ui/empty'
 import { ErrorNote } from '@/components/ui/error-note'
 import { Heading } from '@/components/ui/heading'
-import { Ledger, type LedgerColumn } from '@/components/ui/ledger'
+import type { LedgerColumn } from '@/components/ui/ledger'
+import { LinkButton } from '@/components/ui/link-button'
 import { Section } from '@/components/ui/section'
 import { toast } from '@/components/ui/toast'
 import type { ClientRow } from '@/lib/client/queries'
 import { clientsKey } from '@/lib/client/schema'
 import { fetcher, send, type ClientError } from '@/lib/http/fetcher'
 import type { Role } from '@/lib/auth/actor'
-import type { PersonRow } from '@/lib/person/queries'
-import { peopleKey, personKey } from '@/lib/person/schema'
+import type { ListQuery } from '@/lib/list/schema'
+import type { PeoplePage, PersonRow } from '@/lib/person/queries'
+import { personList } from '@/lib/person/rules'
+import { personKey } from '@/lib/person/schema'
 import { Clients } from './clients'
 import { ChangePerson, InvitePerson } from './person-dialogs'
 
-export function People({ ownId }: { ownId: string }) {
-  const { data: people = [], mutate } = useSWR<PersonRow[], ClientError>(peopleKey, fetcher)
+type Props = { page: PeoplePage; query: ListQuery; timeZone: string; ownId: string }
+
+export function People({ page, query, timeZone, ownId }: Props) {
+  const router = useRouter()
   const { data: clients = [] } = useSWR<ClientRow[], ClientError>(clientsKey, fetcher)
   const [isInviting, setInviting] = useState(false)
   const [changingId, setChangingId] = useState<string | null>(null)
   const [error, setError] = useState<unknown>(null)
 
-  const active = people.filter((person) => person.isActive)
-  const waiting = active.filter((person) => !person.hasPassword && !person.isDemo)
-  const changing = people.find((person) => person.id === changingId) ?? null
+  const { active, waiting } = page.counts
+  const changing = page.rows.find((person) => person.id === changingId) ?? null
 
   async function inviteAgain(person: PersonRow) {
     setError(null)
@@ -46,9 +54,9 @@ export function People({ ownId }: { ownId: string }) {
         crumb="Who may do what here"
         headline={
           <>
-            <b>{active.length === 1 ? 'One person' : `${countWord(active.length, true)} people`}</b>{' '}
-            {active.length === 1 ? 'keeps' : 'keep'} this notebook
-            {waiting.length > 0 ? `; ${countWord(waiting.length)} invited, not yet answered` : ''}
+            <b>{active === 1 ? 'One person' : `${countWord(active, true)} people`}</b>{' '}
+            {active === 1 ? 'keeps' : 'keep'} this notebook
+            {waiting > 0 ? `; ${countWord(waiting)} invited, not yet answered` : ''}
           </>
         }
         sentence="A person may hold several roles; nobody changes their own. A closed account keeps its name on what it signed."
@@ -60,12 +68,32 @@ export function People({ ownId }: { ownId: string }) {
       />
       <div className="mt-7 flex flex-col gap-3">
         <ErrorNote error={error} />
-        <Ledger
+        <ListTools
+          list={personList}
+          path="/people"
+          query={query}
+          choices={page.choices}
+          searchLabel="Find a person"
+          placeholder="Name, e-mail, initials"
+          total={page.total}
+        />
+        <ListLedger
+          list={personList}
+          path="/people"
+          query={query}
+          page={page}
           caption="People of the lab, their roles and whether they can sign in"
-          columns={columnsFor(ownId, setChangingId, inviteAgain)}
-          rows={people}
+          timeZone={timeZone}
           rowKey={(person) => person.id}
           isQuiet={(person) => !person.isActive}
+          cells={cellsFor(ownId)}
+          after={[acts(setChangingId, inviteAgain)]}
+          empty={
+            <Empty
+              title={query.q ? `Nobody here has ${query.q}.` : 'Nobody here is of that kind.'}
+              act={<LinkButton href="/people">Show everybody</LinkButton>}
+            />
+          }
         />
       </div>
       <div className="mt-12 grid gap-x-16 gap-y-10 lg:grid-cols-2">
@@ -83,7 +111,7 @@ export function People({ ownId }: { ownId: string }) {
           onDone={(person) => {
             setInviting(false)
             toast(`The invitation is on its way to ${person.email}`)
-            void mutate()
+            router.refresh()
           }}
         />
       ) : null}
@@ -94,11 +122,11 @@ export function People({ ownId }: { ownId: string }) {
           isOwn={changing.id === ownId}
           clients={clients}
           onClose={() => setChangingId(null)}
-          onStale={() => void mutate()}
+          onStale={() => router.refresh()}
           onDone={(person) => {
             setChangingId(null)
             toast(`${person.name} is changed`)
-            void mutate()
+            router.refresh()
           }}
         />
       ) : null}
@@ -106,21 +134,13 @@ export function People({ ownId }: { ownId: string }) {
   )
 }
 
-function columnsFor(
-  ownId: string,
-  change: (id: string) => void,
-  inviteAgain: (person: PersonRow) => Promise<void>,
-): LedgerColumn<PersonRow>[] {
-  return [
-    {
-      key: 'initials',
-      title: <span className="sr-only">Initials</span>,
-      width: '4rem',
+function cellsFor(ownId: string): Parameters<typeof ListLedger<PersonRow>>[0]['cells'] {
+  return {
+    initials: {
+      width: '4.5rem',
       cell: (person) => <span className="font-mono font-700">{person.initials}</span>,
     },
-    {
-      key: 'name',
-      title: 'Name',
+    name: {
       cell: (person) => (
         <>
           <span className="font-650">{person.name}</span>
@@ -128,40 +148,38 @@ function columnsFor(
         </>
       ),
     },
-    {
-      key: 'roles',
-      title: 'Roles',
+    roles: {
       cell: (person) =>
         `${rolesInWords(person.roles as Role[])}${person.clientName ? `, ${person.clientName}` : ''}`,
     },
-    { key: 'email', title: 'E-mail', from: 'desk', cell: (person) => person.email },
-    { key: 'state', title: 'Signs in', from: 'tablet', cell: stateOf },
-    {
-      key: 'acts',
-      title: <span className="sr-only">Acts</span>,
-      align: 'right',
-      cell: (person) => (
-        <span className="inline-flex gap-4 whitespace-nowrap">
-          {person.isActive && !person.hasPassword && !person.isDemo ? (
-            <Button
-              kind="link"
-              onClick={() => inviteAgain(person)}
-              aria-label={`Send the link to ${person.name} again`}
-            >
-              Send again
-            </Button>
-          ) : null}
-          <Button kind="link" onClick={() => change(person.id)} aria-label={`Change ${person.name}`}>
-            Change
-          </Button>
-        </span>
-      ),
-    },
-  ]
+    email: { from: 'desk' },
+    state: { from: 'tablet' },
+  }
 }
 
-function stateOf(person: PersonRow): string {
-  if (!person.isActive) return 'closed'
-  if (person.isDemo) return 'by one press'
-  return person.hasPassword ? 'with a password' : 'invited, not yet answered'
+function acts(
+  change: (id: string) => void,
+  inviteAgain: (person: PersonRow) => Promise<void>,
+): LedgerColumn<PersonRow> {
+  return {
+    key: 'acts',
+    title: <span className="sr-only">Acts</span>,
+    align: 'right',
+    cell: (person) => (
+      <span className="inline-flex gap-4 whitespace-nowrap">
+        {person.isActive && !person.hasPassword && !person.isDemo ? (
+          <Button
+            kind="link"
+            onClick={() => inviteAgain(person)}
+            aria-label={`Send the link to ${person.name} again`}
+          >
+            Send again
+          </Button>
+        ) : null}
+        <Button kind="link" onClick={() => change(person.id)} aria-label={`Change ${person.name}`}>
+          Change
+        </Button>
+      </span>
+    ),
+  }
 }

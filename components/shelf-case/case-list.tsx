@@ -1,66 +1,77 @@
+'use client'
+
 import Link from 'next/link'
+import { ListLedger } from '@/components/list/list-ledger'
+import { ListTools } from '@/components/list/list-tools'
 import { Empty } from '@/components/ui/empty'
-import { Ledger } from '@/components/ui/ledger'
-import type { CaseRow } from '@/lib/shelf-case/queries/read'
-import { dayText } from '@/lib/report/rules'
+import { LinkButton } from '@/components/ui/link-button'
+import type { ListQuery } from '@/lib/list/schema'
+import type { CaseRow, CasesPage } from '@/lib/shelf-case/queries/list'
+import { caseList } from '@/lib/shelf-case/rules/list'
+
+type Props = { page: CasesPage; query: ListQuery; timeZone: string }
 
 /** Cases, newest first; the last column says who is next. */
-export function CaseList({ cases }: { cases: CaseRow[] }) {
+export function CaseList({ page, query, timeZone }: Props) {
   return (
-    <Ledger
-      caption="Shelf-life cases"
-      rows={cases}
-      rowKey={(c) => c.id}
-      isQuiet={(c) => c.state === 'superseded' || c.state === 'sent back'}
-      empty={
-        <Empty
-          title="No case is here yet"
-          sentence="A formulator puts one forward from a study’s sheet once its readings carry a shelf life."
+    <>
+      <ListTools
+        list={caseList}
+        path="/cases"
+        query={query}
+        choices={page.choices}
+        searchLabel="Find a case"
+        placeholder="Case, study, client, storage"
+        total={page.total}
+      />
+      <div className="mt-3">
+        <ListLedger
+          list={caseList}
+          path="/cases"
+          query={query}
+          page={page}
+          caption="Shelf-life cases"
+          timeZone={timeZone}
+          rowKey={(row) => row.id}
+          isQuiet={(row) => row.state === 'superseded' || row.state === 'sent back'}
+          cells={cells}
+          empty={
+            page.counts.all > 0 ? (
+              <Empty
+                title={query.q ? `No case has ${query.q}.` : 'No case is of that kind.'}
+                act={<LinkButton href="/cases">Show all cases</LinkButton>}
+              />
+            ) : (
+              <Empty
+                title="No case is here yet"
+                sentence="A formulator puts one forward from a study’s sheet once its readings carry a shelf life."
+              />
+            )
+          }
         />
-      }
-      columns={[
-        {
-          key: 'code',
-          title: 'case',
-          width: '90px',
-          cell: (c) => (
-            <Link className="font-650 underline-offset-4 hover:underline" href={`/cases/${c.code}`}>
-              {c.code}
-            </Link>
-          ),
-        },
-        {
-          key: 'study',
-          title: 'study',
-          cell: (c) => (
-            <>
-              <span className="font-650">{c.studyCode}</span> {c.studyTitle}
-            </>
-          ),
-        },
-        {
-          key: 'months',
-          title: 'months',
-          align: 'right',
-          cell: (c) => <b>{c.proposedMonths}</b>,
-        },
-        { key: 'storage', title: 'stored', from: 'desk', cell: (c) => c.storageStatement },
-        { key: 'kind', title: 'kind', from: 'tablet', cell: (c) => c.kind },
-        { key: 'state', title: 'stands at', cell: (c) => c.state },
-        {
-          key: 'next',
-          title: 'who is next',
-          from: 'tablet',
-          cell: (c) => whoIsNext(c),
-        },
-      ]}
-    />
+      </div>
+    </>
   )
 }
 
-function whoIsNext(c: CaseRow): string {
-  if (c.state === 'drafting') return 'formulator puts it forward'
-  if (c.state === 'put forward') return 'QA signs or sends back'
-  if (c.state === 'signed' && c.signedAt) return `signed ${dayText(c.signedAt)}`
-  return 'nobody'
+const cells: Parameters<typeof ListLedger<CaseRow>>[0]['cells'] = {
+  code: {
+    width: '90px',
+    cell: (row) => (
+      <Link className="font-650 underline-offset-4 hover:underline" href={`/cases/${row.code}`}>
+        {row.code}
+      </Link>
+    ),
+  },
+  study: {
+    cell: (row) => (
+      <>
+        <span className="font-650">{row.studyCode}</span> {row.studyTitle}
+      </>
+    ),
+  },
+  months: { cell: (row) => <b>{row.proposedMonths}</b> },
+  storage: { from: 'desk' },
+  kind: { from: 'tablet' },
+  next: { from: 'tablet' },
 }

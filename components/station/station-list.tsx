@@ -3,23 +3,36 @@
 import Link from 'next/link'
 import { useRouter } from 'next/navigation'
 import { useState } from 'react'
+import { ListPages } from '@/components/list/list-pages'
+import { ListTools } from '@/components/list/list-tools'
 import { Button } from '@/components/ui/button'
 import { Empty } from '@/components/ui/empty'
 import { Heading } from '@/components/ui/heading'
+import { LinkButton } from '@/components/ui/link-button'
 import { StationLabel } from '@/components/ui/station-label'
 import { heatLine } from '@/components/marks/heat'
-import type { StationRow } from '@/lib/station/queries/stations'
+import type { ListQuery } from '@/lib/list/schema'
+import type { StationRow, StationsPage } from '@/lib/station/queries/stations'
 import { lightText } from '@/lib/station/rules/keeps'
+import { stationList } from '@/lib/station/rules/list'
 import { sideOf } from '@/lib/science/temperature-log'
 import { dayIn, spokenDay } from '@/lib/study/rules/calendar'
 import { capital, numberWord } from '@/lib/study/rules/words'
 import { StationDialog } from './station-dialog'
 import { TemperatureDialog } from './temperature-dialog'
 
-type Props = { stations: StationRow[]; mayWrite: boolean; mayLog: boolean; timeZone: string }
+type Props = {
+  /** All of them, for the headline. */
+  stations: StationRow[]
+  page: StationsPage
+  query: ListQuery
+  mayWrite: boolean
+  mayLog: boolean
+  timeZone: string
+}
 
 /** The lab's stations in the order of the walk, each a shelf as heavy as it is hot. */
-export function StationList({ stations, mayWrite, mayLog, timeZone }: Props) {
+export function StationList({ stations, page, query, mayWrite, mayLog, timeZone }: Props) {
   const router = useRouter()
   const [isAdding, setIsAdding] = useState(false)
   const [logged, setLogged] = useState<StationRow | null>(null)
@@ -66,54 +79,74 @@ export function StationList({ stations, mayWrite, mayLog, timeZone }: Props) {
           act={add}
         />
       ) : (
-        <ul className="mt-4">
-          {stations.map((station) => (
-            <li key={station.id} className={station.isActive ? '' : 'text-soft'}>
-              <div className="flex flex-wrap items-end gap-x-6 gap-y-1 pt-5 pb-1.5">
-                <span className="w-[130px]">
-                  <StationLabel
-                    celsius={station.kind === 'temperature' ? station.temperatureC : null}
-                    name={station.kind === 'transport' ? 'on road' : undefined}
-                    size={44}
-                  />
-                </span>
-                <Link
-                  href={`/stations/${station.id}`}
-                  className="min-w-[180px] text-19 font-650 underline-offset-4 hover:underline"
-                >
-                  {station.name}
-                </Link>
-                <LastRead station={station} timeZone={timeZone} />
-                <span className="min-w-[150px]">
-                  {station.takenPlaces} of {station.shelves * station.placesPerShelf} places taken
-                </span>
-                {mayLog && station.isActive ? (
-                  <Button
-                    className="ml-auto"
-                    aria-label={`Log the temperature of ${station.name}`}
-                    onClick={() => setLogged(station)}
+        <>
+          <div className="mt-4">
+            <ListTools
+              list={stationList}
+              path="/stations"
+              query={query}
+              searchLabel="Find a station"
+              placeholder="Name or caution"
+              total={page.total}
+              isDrawn
+            />
+          </div>
+          {page.rows.length === 0 ? (
+            <Empty
+              title={query.q ? `No station has ${query.q}.` : 'No station is of that kind.'}
+              act={<LinkButton href="/stations">Show all stations</LinkButton>}
+            />
+          ) : null}
+          <ul className="mt-2">
+            {page.rows.map((station) => (
+              <li key={station.id} className={station.isActive ? '' : 'text-soft'}>
+                <div className="flex flex-wrap items-end gap-x-6 gap-y-1 pt-5 pb-1.5">
+                  <span className="w-[130px]">
+                    <StationLabel
+                      celsius={station.kind === 'temperature' ? station.temperatureC : null}
+                      name={station.kind === 'transport' ? 'on road' : undefined}
+                      size={44}
+                    />
+                  </span>
+                  <Link
+                    href={`/stations/${station.id}`}
+                    className="min-w-[180px] text-19 font-650 underline-offset-4 hover:underline"
                   >
-                    Log the temperature
-                  </Button>
-                ) : null}
-              </div>
-              <hr
-                className="border-0"
-                style={{
-                  borderTop:
-                    station.temperatureC === null
-                      ? '1.5px dashed var(--ink)'
-                      : `${heatLine(station.temperatureC)}px solid var(--ink)`,
-                }}
-              />
-              <p className="pt-1 text-13 text-soft">
-                {[conditionsText(station), station.caution, station.isActive ? '' : 'out of use']
-                  .filter(Boolean)
-                  .join('. ')}
-              </p>
-            </li>
-          ))}
-        </ul>
+                    {station.name}
+                  </Link>
+                  <LastRead station={station} timeZone={timeZone} />
+                  <span className="min-w-[150px]">
+                    {station.takenPlaces} of {station.shelves * station.placesPerShelf} places taken
+                  </span>
+                  {mayLog && station.isActive ? (
+                    <Button
+                      className="ml-auto"
+                      aria-label={`Log the temperature of ${station.name}`}
+                      onClick={() => setLogged(station)}
+                    >
+                      Log the temperature
+                    </Button>
+                  ) : null}
+                </div>
+                <hr
+                  className="border-0"
+                  style={{
+                    borderTop:
+                      station.temperatureC === null
+                        ? '1.5px dashed var(--ink)'
+                        : `${heatLine(station.temperatureC)}px solid var(--ink)`,
+                  }}
+                />
+                <p className="pt-1 text-13 text-soft">
+                  {[conditionsText(station), station.caution, station.isActive ? '' : 'out of use']
+                    .filter(Boolean)
+                    .join('. ')}
+                </p>
+              </li>
+            ))}
+          </ul>
+          <ListPages list={stationList} path="/stations" query={query} page={page} />
+        </>
       )}
       {isAdding ? (
         <StationDialog

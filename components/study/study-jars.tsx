@@ -1,169 +1,154 @@
 'use client'
 
+import { useRouter } from 'next/navigation'
 import { useState } from 'react'
-import useSWR from 'swr'
+import { ListLedger } from '@/components/list/list-ledger'
+import { ListTools } from '@/components/list/list-tools'
 import { JarGlyph } from '@/components/marks/jar-glyph'
+import { heatWeight } from '@/components/marks/heat'
 import { FillDialog } from '@/components/jar/fill-dialog'
 import { Button } from '@/components/ui/button'
-import { Ledger, type LedgerColumn } from '@/components/ui/ledger'
+import { Empty } from '@/components/ui/empty'
 import { LinkButton } from '@/components/ui/link-button'
-import { Section } from '@/components/ui/section'
-import { fetcher } from '@/lib/http/fetcher'
 import type { JarRow } from '@/lib/jar/queries'
-import { namedJar } from '@/lib/jar/rules'
-import type { StudyJars as Page } from '@/lib/study/queries/jars'
-import { spokenDay } from '@/lib/study/rules/calendar'
-import { degrees } from '@/lib/study/rules/finding'
-import { capital, counted, listed, withVariant } from '@/lib/study/rules/words'
-import { studyKeys } from '@/lib/study/schema'
+import type { ListQuery } from '@/lib/list/schema'
+import { grouped } from '@/lib/number/rules'
+import type { StudyJarsPage } from '@/lib/study/queries/jars'
+import { fillOf, jarList, kindWords, nameOf, stationOf } from '@/lib/study/rules/jar-list'
+import { capital, counted, listed } from '@/lib/study/rules/words'
 import { StudyHeading, type StudyRights } from './study-heading'
 
+type Props = {
+  page: StudyJarsPage
+  query: ListQuery
+  rights: StudyRights
+  mayLog: boolean
+  timeZone: string
+}
+
 /** Every jar of a study where it stands, with its label sheet. */
-export function StudyJars({ code, rights, mayLog }: { code: string; rights: StudyRights; mayLog: boolean }) {
-  const { data: page, mutate } = useSWR<Page>(studyKeys.jars(code), fetcher)
+export function StudyJars({ page, query, rights, mayLog, timeZone }: Props) {
+  const router = useRouter()
   const [weighed, setWeighed] = useState<JarRow | null>(null)
-  if (!page) return null
-  const stored = page.jars.filter((jar) => jar.state === 'stored' || jar.state === 'resting').length
+  const { study, counts } = page
+  const path = `/studies/${encodeURIComponent(study.code)}/jars`
   return (
     <>
       <StudyHeading
-        study={page.study}
+        study={study}
         batches={page.batches}
         part="jars"
         rights={rights}
         headline={[
-          { text: `${stored} of ${page.jars.length}`, isStrong: true },
+          { text: `${grouped(counts.standing, 0)} of ${grouped(counts.all, 0)}`, isStrong: true },
           { text: ' jars still stand at their stations', isStrong: false },
         ]}
-        sentence={kindsSentence(page.jars)}
+        sentence={kindsSentence(counts.kinds)}
         acts={
-          <LinkButton href={`/studies/${encodeURIComponent(code)}/labels`} kind="primary">
+          <LinkButton href={`/studies/${encodeURIComponent(study.code)}/labels`} kind="primary">
             Print the labels
           </LinkButton>
         }
       />
-      <div className="mt-6 grid gap-8">
-        {stationsOf(page.jars).map(({ key, name, jars }) => (
-          <Section key={key} title={name} sentence={capital(counted(jars.length, 'jar'))}>
-            <Ledger
-              caption={`Jars at ${name}`}
-              columns={columns(mayLog ? setWeighed : null)}
-              rows={jars}
-              rowKey={(jar) => jar.id}
-              isQuiet={(jar) => jar.state === 'spent' || jar.state === 'lost'}
+      <div className="mt-5">
+        <ListTools
+          list={jarList}
+          path={path}
+          query={query}
+          choices={page.choices}
+          searchLabel="Find a jar of this study"
+          placeholder="Jar, batch, station"
+          total={page.total}
+        />
+      </div>
+      <div className="mt-3">
+        <ListLedger
+          list={jarList}
+          path={path}
+          query={query}
+          page={page}
+          caption={`Jars of ${study.code}`}
+          timeZone={timeZone}
+          rowKey={(jar) => jar.id}
+          isQuiet={(jar) => jar.state === 'spent' || jar.state === 'lost'}
+          before={[glyph]}
+          cells={cellsFor(mayLog ? setWeighed : null)}
+          empty={
+            <Empty
+              title={query.q ? `No jar of ${study.code} has ${query.q}.` : 'No jar is of that kind.'}
+              sentence="The search looks in codes of jars and batches and in the names of stations."
+              act={<LinkButton href={path}>Show all its jars</LinkButton>}
             />
-          </Section>
-        ))}
+          }
+        />
       </div>
       {weighed ? (
-        <FillDialog jar={weighed} onClose={() => setWeighed(null)} onDone={() => void mutate()} />
+        <FillDialog jar={weighed} onClose={() => setWeighed(null)} onDone={() => router.refresh()} />
       ) : null}
     </>
   )
 }
 
-function columns(onWeigh: ((jar: JarRow) => void) | null): LedgerColumn<JarRow>[] {
-  return [
-    {
-      key: 'glyph',
-      title: <span className="sr-only">Drawing</span>,
-      width: '34px',
-      cell: (jar) => (
-        <JarGlyph
-          height={22}
-          kind={jar.kind as 'watch'}
-          state={jar.state === 'spent' ? 'spent' : jar.state === 'lost' ? 'broken' : 'drawn'}
-        />
-      ),
-    },
-    {
-      key: 'code',
-      title: 'jar',
+const glyph = {
+  key: 'glyph',
+  title: <span className="sr-only">Drawing</span>,
+  width: '34px',
+  cell: (jar: JarRow) => (
+    <JarGlyph
+      height={22}
+      kind={jar.kind as 'watch'}
+      state={jar.state === 'spent' ? 'spent' : jar.state === 'lost' ? 'broken' : 'drawn'}
+    />
+  ),
+}
+
+function cellsFor(
+  onWeigh: ((jar: JarRow) => void) | null,
+): Parameters<typeof ListLedger<JarRow>>[0]['cells'] {
+  return {
+    code: {
       cell: (jar) => (
         <span id={jar.code} className="font-mono font-600 target:bg-ink target:px-1 target:text-onink">
           {nameOf(jar)}
         </span>
       ),
     },
-    {
-      key: 'kind',
-      title: 'kind',
-      cell: (jar) => (jar.setAsideFor ? `for ${jar.setAsideFor}` : (kindWords[jar.kind] ?? jar.kind)),
-    },
-    { key: 'batch', title: 'batch', from: 'tablet', cell: (jar) => jar.batchCode },
-    { key: 'state', title: 'state', cell: (jar) => jar.state },
-    {
-      key: 'place',
-      title: 'place',
-      cell: (jar) => (jar.shelf === null ? '' : `shelf ${jar.shelf}, place ${jar.place}`),
-    },
-    {
-      key: 'next',
-      title: 'asked for next',
+    batch: { from: 'tablet' },
+    station: {
       from: 'tablet',
-      cell: (jar) => (jar.nextDueOn ? spokenDay(jar.nextDueOn) : ''),
+      cell: (jar) => (
+        <span
+          className="whitespace-nowrap"
+          style={{
+            fontWeight: jar.temperatureC === null || jar.isFreezeThaw ? 430 : heatWeight(jar.temperatureC),
+          }}
+        >
+          {stationOf(jar)}
+        </span>
+      ),
     },
-    {
-      key: 'fill',
-      title: 'fill',
-      align: 'right',
+    next: { from: 'tablet' },
+    fill: {
       from: 'desk',
-      cell: (jar) =>
-        jar.grossG !== null && jar.tareG !== null ? (
-          `${(jar.grossG - jar.tareG).toFixed(2)} g`
-        ) : onWeigh && jar.state !== 'spent' ? (
+      cell: (jar) => {
+        const fill = fillOf(jar)
+        if (fill !== null) return grouped(fill, 2)
+        return onWeigh && jar.state !== 'spent' ? (
           <Button kind="link" aria-label={`Weigh ${nameOf(jar)}`} onClick={() => onWeigh(jar)}>
             Weigh
           </Button>
         ) : (
           ''
-        ),
+        )
+      },
     },
-  ]
+  }
 }
 
-const kindWords: Record<string, string> = {
-  watch: 'watch jar',
-  measuring: 'measuring jar',
-  spare: 'spare',
-  retain: 'retain',
-}
-
-function nameOf(jar: JarRow): string {
-  return namedJar(
-    jar.code,
-    jar.isFreezeThaw === null ? null : { temperatureC: jar.temperatureC, isFreezeThaw: jar.isFreezeThaw },
-  )
-}
-
-function kindsSentence(jars: JarRow[]): string {
-  const kinds = Object.entries(kindWords).flatMap(([kind, word]) => {
-    const count = jars.filter((jar) => jar.kind === kind).length
+function kindsSentence(kinds: StudyJarsPage['counts']['kinds']): string {
+  const texts = Object.entries(kindWords).flatMap(([kind, word]) => {
+    const count = kinds.find((one) => one.kind === kind)?.count ?? 0
     return count === 0 ? [] : [counted(count, word)]
   })
-  const text = listed(kinds)
-  return `${capital(text)}. A watch jar stays sealed to the end, a measuring jar is opened once.`
-}
-
-function stationsOf(jars: JarRow[]) {
-  const groups = new Map<string, { key: string; name: string; jars: JarRow[] }>()
-  for (const jar of jars) {
-    const key = jar.studyStationId ?? jar.kind
-    const group = groups.get(key) ?? { key, name: placeName(jar), jars: [] }
-    group.jars.push(jar)
-    groups.set(key, group)
-  }
-  return [...groups.values()]
-}
-
-function placeName(jar: JarRow): string {
-  if (jar.studyStationId === null) return jar.kind === 'retain' ? 'Retains' : 'Opened at the start'
-  return withVariant(stationPlace(jar), jar.variant ?? '')
-}
-
-function stationPlace(jar: JarRow): string {
-  if (jar.isFreezeThaw) return `Freeze-thaw, ${jar.stationName}`
-  return jar.temperatureC === null
-    ? (jar.stationName ?? '')
-    : `${degrees(jar.temperatureC)}, ${jar.stationName}`
+  return `${capital(listed(texts))}. A watch jar stays sealed to the end, a measuring jar is opened once.`
 }

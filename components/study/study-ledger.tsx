@@ -1,33 +1,34 @@
 'use client'
 
 import Link from 'next/link'
-import { useRouter } from 'next/navigation'
 import { useRef, type KeyboardEvent } from 'react'
-import useSWR from 'swr'
+import { ListLedger } from '@/components/list/list-ledger'
+import { ListTools } from '@/components/list/list-tools'
 import { Empty } from '@/components/ui/empty'
 import { Heading } from '@/components/ui/heading'
-import { Ledger, type LedgerColumn } from '@/components/ui/ledger'
 import { LinkButton } from '@/components/ui/link-button'
 import { StandingMark } from '@/components/marks/standing-mark'
-import { fetcher } from '@/lib/http/fetcher'
+import { isNarrowed, listAddress } from '@/lib/list/rules'
+import type { ListQuery } from '@/lib/list/schema'
 import type { Ledger as LedgerPage } from '@/lib/study/queries/ledger'
-import { addDays, spokenDay } from '@/lib/study/rules/calendar'
-import { inSentence } from '@/lib/study/rules/finding'
+import { spokenDay } from '@/lib/study/rules/calendar'
 import type { LedgerRow } from '@/lib/study/rules/ledger'
-import { counted } from '@/lib/study/rules/words'
-import { studyKeys, type StudyFilter } from '@/lib/study/schema'
-import { LedgerFilter } from './ledger-filter'
+import { batchNames, standingNote, studyList } from '@/lib/study/rules/list'
 import { WorstShelf } from './worst-shelf'
 
-type Props = { filter: StudyFilter; mayStart: boolean; labName: string }
+type Props = {
+  ledger: LedgerPage
+  query: ListQuery
+  mayStart: boolean
+  lab: { name: string; timeZone: string }
+}
 
 /** All studies as a ledger: each shows its worst shelf in miniature, and the last column says who is next. */
-export function StudyLedger({ filter, mayStart, labName }: Props) {
-  const { data } = useSWR<LedgerPage>(studyKeys.list(filter), fetcher, { keepPreviousData: true })
+export function StudyLedger({ ledger, query, mayStart, lab }: Props) {
   const table = useRef<HTMLDivElement>(null)
-  const router = useRouter()
-  if (!data) return null
-  const { rows, counts, headline, sentence } = data
+  const { rows, counts, headline, sentence } = ledger
+  const is = query.filters['is']
+  const inState = (state: string) => listAddress('/studies', studyList, query, { filters: { is: state } })
 
   /** j and k walk the rows, as the arrow keys of a list would. */
   function walk(event: KeyboardEvent) {
@@ -43,7 +44,7 @@ export function StudyLedger({ filter, mayStart, labName }: Props) {
   return (
     <div onKeyDown={walk}>
       <Heading
-        crumb={`${labName}. ${filter.is === 'running' ? 'Running' : 'Ended'} studies${sortWords[filter.sort]}`}
+        crumb={`${lab.name}. ${is === 'closed' ? 'Ended' : 'Running'} studies${sortWords[query.sort] ?? ''}`}
         headline={
           <>
             <b>{headline[0]}</b>
@@ -53,18 +54,8 @@ export function StudyLedger({ filter, mayStart, labName }: Props) {
         sentence={sentence || undefined}
         tabsLabel="Running and ended studies"
         tabs={[
-          {
-            href: address({ ...filter, is: 'running' }),
-            label: 'Running',
-            count: counts.running,
-            isHere: filter.is === 'running',
-          },
-          {
-            href: address({ ...filter, is: 'closed' }),
-            label: 'Ended',
-            count: counts.closed,
-            isHere: filter.is === 'closed',
-          },
+          { href: inState('running'), label: 'Running', count: counts.running, isHere: is === 'running' },
+          { href: inState('closed'), label: 'Ended', count: counts.closed, isHere: is === 'closed' },
         ]}
         acts={
           mayStart ? (
@@ -74,14 +65,29 @@ export function StudyLedger({ filter, mayStart, labName }: Props) {
           ) : undefined
         }
       />
-      <LedgerFilter filter={filter} onChange={(next) => router.replace(address(next), { scroll: false })} />
+      <div className="mt-4">
+        <ListTools
+          list={studyList}
+          path="/studies"
+          query={query}
+          choices={ledger.choices}
+          without={mayStart || ledger.choices.client.length > 0 ? ['is'] : ['is', 'client', 'station', 'by']}
+          searchLabel="Find a study"
+          placeholder="Batch, formula, client, jar"
+          total={ledger.total}
+        />
+      </div>
       <div ref={table} className="mt-2">
-        <Ledger
+        <ListLedger
+          list={studyList}
+          path="/studies"
+          query={query}
+          page={ledger}
           caption="Studies"
-          columns={columnsFor(filter)}
-          rows={rows}
+          timeZone={lab.timeZone}
           rowKey={(row) => row.id}
-          empty={<NoStudy filter={filter} mayStart={mayStart} />}
+          cells={cells}
+          empty={<NoStudy query={query} mayStart={mayStart} />}
         />
       </div>
       {rows.length > 0 ? (
@@ -98,80 +104,42 @@ export function StudyLedger({ filter, mayStart, labName }: Props) {
   )
 }
 
-const sortWords = { worst: ', worst first', code: ', newest first', next: ', next pull first' }
-
-export function address(filter: StudyFilter): string {
-  const search = new URLSearchParams({ is: filter.is, sort: filter.sort })
-  if (filter.q) search.set('q', filter.q)
-  if (filter.standing !== 'any') search.set('standing', filter.standing)
-  return `/studies?${search}`
+const sortWords: Record<string, string> = {
+  standing: ', worst first',
+  code: ', by code',
+  next: ', next pull first',
 }
 
-function columnsFor(filter: StudyFilter): LedgerColumn<LedgerRow>[] {
-  const sortBy = (sort: StudyFilter['sort'], now: 'up' | 'down') => ({
-    href: address({ ...filter, sort }),
-    ...(filter.sort === sort ? { now } : {}),
-  })
-  return [
-    {
-      key: 'code',
-      title: 'study',
-      width: '68px',
-      sort: sortBy('code', 'down'),
-      cell: (row) => (
-        <Link
-          data-study
-          href={`/studies/${encodeURIComponent(row.code)}`}
-          className="font-600 whitespace-nowrap underline-offset-4 hover:underline"
-        >
-          {row.code}
-        </Link>
-      ),
-    },
-    {
-      key: 'batch',
-      title: 'batch and formula',
-      cell: (row) => (
-        <span className="block max-w-[118px] truncate sm:max-w-[230px]" title={row.title}>
-          <b className="font-650">{batchNames(row.batches)}</b> {row.formulaName}
-        </span>
-      ),
-    },
-    { key: 'client', title: 'client', from: 'desk', cell: (row) => row.clientName ?? '' },
-    {
-      key: 'shelf',
-      title: 'worst shelf, each to its own time',
-      from: 'desk',
-
-      cell: (row) => <WorstShelf row={row} />,
-    },
-    {
-      key: 'standing',
-      title: 'standing',
-      sort: sortBy('worst', 'down'),
-      cell: (row) => <StandingCell row={row} />,
-    },
-    {
-      key: 'next',
-      title: 'next pull',
-      from: 'tablet',
-      width: '150px',
-      sort: sortBy('next', 'up'),
-      cell: (row) => <NextPull row={row} />,
-    },
-    {
-      key: 'who',
-      title: 'who is next',
-      from: 'tablet',
-      cell: (row) => (
-        <span className={`whitespace-nowrap ${row.isMine ? 'font-700' : ''}`}>{row.whoIsNext}</span>
-      ),
-    },
-  ]
-}
-
-function batchNames(codes: string[]): string {
-  return codes.length > 2 ? `${codes[0]} to ${codes.at(-1)}` : codes.join(' and ')
+const cells: Parameters<typeof ListLedger<LedgerRow>>[0]['cells'] = {
+  code: {
+    width: '68px',
+    cell: (row) => (
+      <Link
+        data-study
+        href={`/studies/${encodeURIComponent(row.code)}`}
+        className="font-600 whitespace-nowrap underline-offset-4 hover:underline"
+      >
+        {row.code}
+      </Link>
+    ),
+  },
+  batch: {
+    cell: (row) => (
+      <span className="block max-w-[118px] truncate sm:max-w-[230px]" title={row.title}>
+        <b className="font-650">{batchNames(row.batches)}</b> {row.formulaName}
+      </span>
+    ),
+  },
+  client: { from: 'desk' },
+  shelf: { from: 'desk', cell: (row) => <WorstShelf row={row} /> },
+  standing: { align: 'left', cell: (row) => <StandingCell row={row} /> },
+  next: { from: 'tablet', width: '150px', cell: (row) => <NextPull row={row} /> },
+  who: {
+    from: 'tablet',
+    cell: (row) => (
+      <span className={`whitespace-nowrap ${row.isMine ? 'font-700' : ''}`}>{row.whoIsNext}</span>
+    ),
+  },
 }
 
 function StandingCell({ row }: { row: LedgerRow }) {
@@ -195,18 +163,6 @@ function StandingCell({ row }: { row: LedgerRow }) {
   )
 }
 
-function standingNote({ standing, worst, timePoints, startedOn }: LedgerRow): string {
-  if (worst?.isPending) return `${inSentence(worst.attribute)}, to be confirmed`
-  if (standing === 'untold' || !worst) {
-    return timePoints > 1 ? counted(timePoints, 'time point') : 'nothing read yet'
-  }
-  const name = inSentence(worst.attribute)
-  if (standing === 'leaning' && worst.leavesAtWeeks !== null) {
-    return `${name}, ${spokenDay(addDays(startedOn, Math.round(worst.leavesAtWeeks * 7)), false)}`
-  }
-  return worst.used === null ? name : `${name}, ${Math.round(worst.used * 100)} %`
-}
-
 function NextPull({ row }: { row: LedgerRow }) {
   if (row.nextPullOn === null) return <span className="text-soft">done</span>
   const { due, done } = row.jarsNext
@@ -222,14 +178,16 @@ function NextPull({ row }: { row: LedgerRow }) {
   )
 }
 
-function NoStudy({ filter, mayStart }: { filter: StudyFilter; mayStart: boolean }) {
-  if (filter.q || filter.standing !== 'any') {
+function NoStudy({ query, mayStart }: { query: ListQuery; mayStart: boolean }) {
+  const isClosed = query.filters['is'] === 'closed'
+  const { is: _, ...others } = studyList.filters
+  if (isNarrowed({ filters: others }, query)) {
     return (
       <Empty
         title={
-          filter.q
-            ? `No ${filter.is === 'closed' ? 'ended' : 'running'} study has ${filter.q}.`
-            : `None is ${filter.standing}.`
+          query.q
+            ? `No ${isClosed ? 'ended' : 'running'} study has ${query.q}.`
+            : `None is ${query.filters['standing'] || 'of that kind'}.`
         }
         sentence="The search looks in codes, titles, batches, formulas, clients and jar codes."
         act={<LinkButton href="/studies">Show all running studies</LinkButton>}
@@ -238,10 +196,10 @@ function NoStudy({ filter, mayStart }: { filter: StudyFilter; mayStart: boolean 
   }
   return (
     <Empty
-      title={filter.is === 'closed' ? 'No study has ended' : 'No study runs yet'}
+      title={isClosed ? 'No study has ended' : 'No study runs yet'}
       sentence="A study puts a batch's jars on the stations of a protocol and says when each is pulled."
       act={
-        mayStart && filter.is === 'running' ? (
+        mayStart && !isClosed ? (
           <LinkButton href="/studies/new" kind="primary">
             Start the first study
           </LinkButton>

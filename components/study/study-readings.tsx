@@ -1,98 +1,101 @@
 'use client'
 
-import { useState } from 'react'
-import useSWR from 'swr'
+import { useRouter } from 'next/navigation'
+import type { ReactNode } from 'react'
+import { ListPages } from '@/components/list/list-pages'
+import { ListTools } from '@/components/list/list-tools'
+import { SortHead } from '@/components/list/sort-head'
 import { Empty } from '@/components/ui/empty'
-import { Select } from '@/components/ui/select'
-import { fetcher } from '@/lib/http/fetcher'
-import { namedJar } from '@/lib/jar/rules'
-import type { ReadingChain, StudyReadings as Page } from '@/lib/study/queries/readings'
+import { isNarrowed } from '@/lib/list/rules'
+import type { ListQuery } from '@/lib/list/schema'
+import { grouped } from '@/lib/number/rules'
+import type { ReadingChain, ReadingEntry, StudyReadings as Page } from '@/lib/study/queries/readings'
 import { dayIn, spokenDay } from '@/lib/study/rules/calendar'
 import { attributeName } from '@/lib/study/rules/finding'
+import { jarName, readingList } from '@/lib/study/rules/reading-list'
 import { shownWithUnit } from '@/lib/study/rules/words'
-import { studyKeys } from '@/lib/study/schema'
 import { ReadingActs } from './reading-acts'
 import { StudyHeading, type StudyRights } from './study-heading'
 
-type Props = { code: string; rights: StudyRights; timeZone: string; personId: string; mayLog: boolean }
+type Props = {
+  page: Page
+  query: ListQuery
+  rights: StudyRights
+  timeZone: string
+  personId: string
+  mayLog: boolean
+}
 
 /** Every reading with all that it superseded: a correction hides nothing. */
-export function StudyReadings({ code, rights, timeZone, personId, mayLog }: Props) {
-  const { data: page, mutate } = useSWR<Page>(studyKeys.readings(code), fetcher)
-  const [attribute, setAttribute] = useState('')
-  if (!page) return null
-  const present = [...new Set(page.readings.map((chain) => chain.current.attribute))]
-  const shown = page.readings.filter((chain) => attribute === '' || chain.current.attribute === attribute)
-  const corrected = page.readings.filter((chain) => chain.entries.length > 1).length
+export function StudyReadings({ page, query, rights, timeZone, personId, mayLog }: Props) {
+  const router = useRouter()
+  const { study, counts, rows } = page
+  const path = `/studies/${encodeURIComponent(study.code)}/readings`
+  const columns = readingList.columns.filter((column) => query.columns.includes(column.key))
   return (
     <>
       <StudyHeading
-        study={page.study}
+        study={study}
         batches={page.batches}
         part="readings"
         rights={rights}
         headline={[
-          { text: String(page.readings.length), isStrong: true },
-          {
-            text: page.readings.length === 1 ? ' reading is on record' : ' readings are on record',
-            isStrong: false,
-          },
+          { text: grouped(counts.all, 0), isStrong: true },
+          { text: counts.all === 1 ? ' reading is on record' : ' readings are on record', isStrong: false },
         ]}
         sentence={
-          corrected === 0
+          counts.changed === 0
             ? 'None was corrected or voided.'
-            : `${corrected} ${corrected === 1 ? 'was' : 'were'} corrected or voided; what stood before is struck through and stays.`
+            : `${grouped(counts.changed, 0)} ${counts.changed === 1 ? 'was' : 'were'} corrected or voided; what stood before is struck through and stays.`
         }
       />
-      <div data-screen-only className="mt-4">
-        <Select
-          label="Attribute"
-          hideLabel
-          value={attribute}
-          options={[
-            { value: '', label: 'Every attribute' },
-            ...present.map((key) => ({ value: key, label: attributeName(key) })),
-          ]}
-          onPick={setAttribute}
-          wrap="w-[220px]"
+      <div className="mt-4">
+        <ListTools
+          list={readingList}
+          path={path}
+          query={query}
+          choices={page.choices}
+          searchLabel="Find a reading"
+          placeholder="Jar, attribute, typed, reason"
+          total={page.total}
         />
       </div>
-      {shown.length === 0 ? (
-        <Empty title="Nothing was read yet" sentence="Readings appear here as they are taken at the Bench." />
+      {rows.length === 0 ? (
+        isNarrowed(readingList, query) ? (
+          <Empty title="No reading is of that kind" />
+        ) : (
+          <Empty
+            title="Nothing was read yet"
+            sentence="Readings appear here as they are taken at the Bench."
+          />
+        )
       ) : (
         <div className="relative mt-2 overflow-x-auto" role="region" aria-label="Readings" tabIndex={0}>
           <table className="w-full border-collapse text-15">
-            <caption className="sr-only">Readings of {code}, in the order they were recorded</caption>
+            <caption className="sr-only">Readings of {study.code}, each with what it superseded</caption>
             <thead>
               <tr className="border-b-[1.75px] border-ink text-left text-13 text-soft [&_th]:px-2 [&_th]:py-1.5 [&_th]:font-430 [&_th:first-child]:pl-0">
-                <th scope="col">jar</th>
-                <th scope="col">time</th>
-                <th scope="col">attribute</th>
-                <th scope="col" className="text-right">
-                  value
-                </th>
-                <th scope="col" className="pl-6!">
-                  as typed
-                </th>
-                <th scope="col">read by</th>
-                <th scope="col">measured</th>
+                {columns.map((column) => (
+                  <SortHead key={column.key} list={readingList} path={path} query={query} column={column} />
+                ))}
                 <th scope="col">
                   <span className="sr-only">Acts</span>
                 </th>
               </tr>
             </thead>
             <tbody>
-              {shown.map((chain) => (
+              {rows.map((chain) => (
                 <Chain
                   key={chain.current.id}
                   chain={chain}
+                  keys={columns.map((column) => column.key)}
                   timeZone={timeZone}
                   acts={
-                    mayLog && page.study.state === 'running' && !chain.current.isVoid ? (
+                    mayLog && study.state === 'running' && !chain.current.isVoid ? (
                       <ReadingActs
                         reading={chain.current}
                         isOwn={chain.current.recordedBy === personId}
-                        onDone={() => void mutate()}
+                        onDone={() => router.refresh()}
                       />
                     ) : null
                   }
@@ -102,33 +105,68 @@ export function StudyReadings({ code, rights, timeZone, personId, mayLog }: Prop
           </table>
         </div>
       )}
+      <ListPages list={readingList} path={path} query={query} page={page} />
     </>
   )
 }
 
-function Chain({ chain, timeZone, acts }: { chain: ReadingChain; timeZone: string; acts: React.ReactNode }) {
+type ChainProps = { chain: ReadingChain; keys: string[]; timeZone: string; acts: ReactNode }
+
+function Chain({ chain, keys, timeZone, acts }: ChainProps) {
   return chain.entries.map((entry, index) => {
     const isCurrent = index === chain.entries.length - 1
-    const old = isCurrent ? '' : 'line-through decoration-1 text-soft'
     return (
       <tr
         key={entry.id}
         className={`align-baseline [&_td]:px-2 [&_td]:py-1.5 [&_td:first-child]:pl-0 ${isCurrent ? 'border-b border-hair' : ''}`}
       >
-        <td className="font-mono text-14 whitespace-nowrap">
-          {entry.jarCode ? namedJar(entry.jarCode, stationOf(entry)) : entry.batchCode}
-        </td>
-        <td className="whitespace-nowrap">{entry.label ?? 'initial'}</td>
+        {keys.map((key) => (
+          <Cell
+            key={key}
+            of={key}
+            entry={entry}
+            isCurrent={isCurrent}
+            isAmended={index > 0}
+            timeZone={timeZone}
+          />
+        ))}
+        <td className="text-right">{isCurrent ? acts : null}</td>
+      </tr>
+    )
+  })
+}
+
+type CellProps = {
+  of: string
+  entry: ReadingEntry
+  isCurrent: boolean
+  isAmended: boolean
+  timeZone: string
+}
+
+function Cell({ of, entry, isCurrent, isAmended, timeZone }: CellProps) {
+  const old = isCurrent ? '' : 'line-through decoration-1 text-soft'
+  switch (of) {
+    case 'jar':
+      return <td className="font-mono text-14 whitespace-nowrap">{jarName(entry)}</td>
+    case 'attribute':
+      return (
         <td>
           {attributeName(entry.attribute)}
           {entry.replicate > 1 ? <span className="text-soft"> {entry.replicate}</span> : null}
         </td>
+      )
+    case 'value':
+      return (
         <td className={`text-right whitespace-nowrap ${isCurrent ? 'font-600' : ''}`}>
           <span className={old}>
             {entry.isVoid || entry.value === null ? 'void' : shownWithUnit(entry.attribute, entry.value)}
           </span>
-          {isCurrent && chain.entries.length > 1 ? <span className="sr-only"> counts now</span> : null}
+          {isCurrent && isAmended ? <span className="sr-only"> counts now</span> : null}
         </td>
+      )
+    case 'typed':
+      return (
         <td className="max-w-[260px] pl-6!">
           <span className={old}>{entry.typed}</span>
           {entry.reason ? <span className="block text-13 text-soft">because: {entry.reason}</span> : null}
@@ -138,21 +176,24 @@ function Chain({ chain, timeZone, acts }: { chain: ReadingChain; timeZone: strin
             </span>
           ))}
         </td>
+      )
+    case 'by':
+      return (
         <td className="whitespace-nowrap" title={entry.readByName}>
           {entry.readBy}
           {entry.instrumentCode ? <span className="text-soft">, {entry.instrumentCode}</span> : null}
         </td>
-        <td className="whitespace-nowrap">{moment(entry.measuredAt, timeZone)}</td>
-        <td className="text-right">{isCurrent ? acts : null}</td>
-      </tr>
-    )
-  })
-}
-
-function stationOf(entry: ReadingChain['current']) {
-  return entry.isFreezeThaw === null
-    ? null
-    : { temperatureC: entry.temperatureC, isFreezeThaw: entry.isFreezeThaw }
+      )
+    case 'measured':
+    case 'recorded':
+      return (
+        <td className="whitespace-nowrap">
+          {moment(of === 'measured' ? entry.measuredAt : entry.recordedAt, timeZone)}
+        </td>
+      )
+    default:
+      return <td>{readingList.columns.find((column) => column.key === of)?.value(entry)}</td>
+  }
 }
 
 function moment(instant: string, timeZone: string): string {

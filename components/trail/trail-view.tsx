@@ -1,64 +1,59 @@
+'use client'
+
 import Link from 'next/link'
+import type { ReactNode } from 'react'
+import { ListPages } from '@/components/list/list-pages'
+import { ListTools } from '@/components/list/list-tools'
 import { Empty } from '@/components/ui/empty'
 import { Heading } from '@/components/ui/heading'
 import { LinkButton } from '@/components/ui/link-button'
-import { trailAddress, type ShownTrail } from './trail-address'
-import type { Change } from './trail-changes'
-import { TrailFilter } from './trail-filter'
-import type { TrailLine } from './trail-lines'
+import { isNarrowed } from '@/lib/list/rules'
+import type { ListQuery } from '@/lib/list/schema'
+import type { TrailPage } from '@/lib/trail/queries'
+import type { Change } from '@/lib/trail/rules/changes'
+import type { TrailLine } from '@/lib/trail/rules/lines'
+import { trailList } from '@/lib/trail/rules/list'
 
 type Props = {
-  shown: ShownTrail
-  isStudyKnown: boolean
-  lines: TrailLine[]
-  /** Id below which the older ones begin. */
-  next: number | null
+  page: TrailPage
+  query: ListQuery
   timeZone: string
   /** Whose entries this person sees, in a sentence. */
   scope: string
 }
 
 /** Who did what, when, and why: each changed row as the database wrote it down. */
-export function TrailView({ shown, isStudyKnown, lines, next, timeZone, scope }: Props) {
+export function TrailView({ page, query, timeZone, scope }: Props) {
+  const { rows } = page
+  const isSought = isNarrowed(trailList, query)
   return (
     <>
       <Heading
         crumb={`Record of every change, the latest written first. Times of ${timeZone.replace('_', ' ')}`}
-        headline={<Headline line={lines[0]} />}
+        headline={<Headline line={rows[0]} />}
         sentence={`Written by the database itself, one entry for each changed row; none can be altered. ${scope}`}
       />
-      <TrailFilter key={`${shown.table} ${shown.study}`} shown={shown} isStudyKnown={isStudyKnown} />
-      {lines.length === 0 ? (
+      <div className="mt-4">
+        <ListTools
+          list={trailList}
+          path="/trail"
+          query={query}
+          choices={page.choices}
+          searchLabel="Find an entry"
+          placeholder="Code, name, reason, what was done"
+          total={page.total}
+        />
+      </div>
+      {rows.length === 0 ? (
         <Empty
-          title={shown.table || shown.study ? 'No such entry' : 'Nothing is written yet'}
-          sentence={
-            shown.table || shown.study ? `Nothing of that kind is in what you may read. ${scope}` : scope
-          }
-          act={
-            shown.table || shown.study ? <LinkButton href="/trail">Show everything</LinkButton> : undefined
-          }
+          title={isSought ? 'No such entry' : 'Nothing is written yet'}
+          sentence={isSought ? `Nothing of that kind is in what you may read. ${scope}` : scope}
+          act={isSought ? <LinkButton href="/trail">Show everything</LinkButton> : undefined}
         />
       ) : (
-        <Lines lines={lines} />
+        <TrailTable lines={rows} columns={query.columns} />
       )}
-      <nav aria-label="Pages of the record" data-screen-only className="mt-3 flex gap-8 text-15">
-        {shown.before ? (
-          <Link
-            href={trailAddress({ ...shown, before: null })}
-            className="inline-flex min-h-11 items-center underline underline-offset-4"
-          >
-            Latest entries
-          </Link>
-        ) : null}
-        {next === null ? null : (
-          <Link
-            href={trailAddress({ ...shown, before: next })}
-            className="inline-flex min-h-11 items-center underline underline-offset-4"
-          >
-            Older entries
-          </Link>
-        )}
-      </nav>
+      <ListPages list={trailList} path="/trail" query={query} page={page} />
     </>
   )
 }
@@ -80,71 +75,104 @@ function Headline({ line }: { line: TrailLine | undefined }) {
   )
 }
 
-function Lines({ lines }: { lines: TrailLine[] }) {
-  const head = 'h-9 px-2 align-bottom text-left text-13 font-430 text-soft first:pl-0 last:pr-0'
+/** Entries as a table, and on a phone each as a block of its own. */
+export function TrailTable({ lines, columns }: { lines: TrailLine[]; columns: readonly string[] }) {
+  const shown = drawn.filter(({ key }) => columns.includes(key))
   return (
     <table className="mt-2 block w-full border-collapse text-15 sm:table">
       <caption className="sr-only">Record, the latest written first</caption>
       <thead className="hidden sm:table-header-group">
         <tr className="border-b-[1.75px] border-ink">
-          <th scope="col" className={`${head} w-[64px]`}>
-            entry
-          </th>
-          <th scope="col" className={`${head} w-[170px]`}>
-            when and who
-          </th>
-          <th scope="col" className={`${head} w-[190px]`}>
-            what
-          </th>
-          <th scope="col" className={head}>
-            before and after
-          </th>
-          <th scope="col" className={`${head} hidden w-[24%] lg:table-cell`}>
-            why
-          </th>
+          {shown.map(({ key, title, width }) => (
+            <th
+              key={key}
+              scope="col"
+              className={`h-9 px-2 align-bottom text-left text-13 font-430 text-soft first:pl-0 last:pr-0 ${width}`}
+            >
+              {title}
+            </th>
+          ))}
         </tr>
       </thead>
       <tbody className="block sm:table-row-group">
         {lines.map((line) => (
-          <Row key={line.id} line={line} />
+          <tr key={line.id} className="block border-b border-hair py-2 align-top sm:table-row sm:py-0">
+            {shown.map(({ key, cell, className = '' }) => (
+              <td
+                key={key}
+                className={`block py-0.5 sm:table-cell sm:px-2 sm:py-2 first:pl-0 last:pr-0 ${className}`}
+              >
+                {cell(line)}
+              </td>
+            ))}
+          </tr>
         ))}
       </tbody>
     </table>
   )
 }
 
-function Row({ line }: { line: TrailLine }) {
-  const { name, href } = line
-  const cell = 'block py-0.5 sm:table-cell sm:px-2 sm:py-2 first:pl-0 last:pr-0'
-  return (
-    <tr className="block border-b border-hair py-2 align-top sm:table-row sm:py-0">
-      <td className={`${cell} text-soft`}>{line.id}</td>
-      <td className={cell}>
-        {line.who}
-        <span className="block text-13 text-soft">{line.when}</span>
-        {line.isShifted ? <span className="block text-13 text-soft">clock set by the demo</span> : null}
-      </td>
-      <td className={`${cell} font-600`}>
-        {line.thing}{' '}
-        {name ? (
-          href ? (
-            <Link href={href} className="underline underline-offset-4">
-              {name}
-            </Link>
-          ) : (
-            name
-          )
-        ) : null}{' '}
-        <span className="font-430">{line.act}</span>
-      </td>
-      <td className={`${cell} min-w-0 text-14 [overflow-wrap:anywhere]`}>
-        <Changes changes={line.changes} isUpdate={line.isUpdate} />
-        {line.reason ? <p className="mt-1 lg:hidden">Why: {line.reason}</p> : null}
-      </td>
-      <td className={`${cell} hidden lg:table-cell`}>{line.reason}</td>
-    </tr>
-  )
+type Drawn = {
+  key: string
+  title: string
+  width: string
+  className?: string
+  cell: (line: TrailLine) => ReactNode
 }
+
+const drawn: Drawn[] = [
+  { key: 'entry', title: 'entry', width: 'w-[64px]', className: 'text-soft', cell: (line) => line.id },
+  {
+    key: 'when',
+    title: 'when',
+    width: 'w-[150px]',
+    cell: (line) => (
+      <>
+        {line.when}
+        {line.isShifted ? <span className="block text-13 text-soft">clock set by the demo</span> : null}
+      </>
+    ),
+  },
+  { key: 'who', title: 'who', width: 'w-[120px]', cell: (line) => line.who },
+  {
+    key: 'what',
+    title: 'what',
+    width: 'w-[180px]',
+    className: 'font-600',
+    cell: ({ thing, name, href, act }) => (
+      <>
+        {thing}{' '}
+        {name && href ? (
+          <Link href={href} className="underline underline-offset-4">
+            {name}
+          </Link>
+        ) : (
+          name
+        )}{' '}
+        <span className="font-430">{act}</span>
+      </>
+    ),
+  },
+  {
+    key: 'changes',
+    title: 'before and after',
+    width: '',
+    className: 'min-w-0 text-14 [overflow-wrap:anywhere]',
+    cell: (line) => <Changes changes={line.changes} isUpdate={line.isUpdate} />,
+  },
+  {
+    key: 'why',
+    title: 'why',
+    width: 'w-[20%]',
+    cell: ({ reason }) =>
+      reason ? (
+        <>
+          <span className="text-soft sm:hidden">Why: </span>
+          {reason}
+        </>
+      ) : null,
+  },
+]
 
 /** What was and what is, in words: what is new stands in full ink, what it replaced is struck through. */
 function Changes({ changes, isUpdate }: { changes: Change[]; isUpdate: boolean }) {

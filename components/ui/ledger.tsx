@@ -1,13 +1,15 @@
 import Link from 'next/link'
 import type { ReactNode } from 'react'
 
+/** Address that sorts by a column, and how it is sorted now. */
+export type Sort = { href: string; now?: 'up' | 'down' }
+
 export type LedgerColumn<Row> = {
   key: string
   title: ReactNode
   cell: (row: Row) => ReactNode
   align?: 'left' | 'right'
-  /** Address that sorts by this column, and how it is sorted now. */
-  sort?: { href: string; now?: 'up' | 'down' }
+  sort?: Sort
   /** Left out below 820 px, or below 640 px. */
   from?: 'tablet' | 'desk'
   width?: string
@@ -44,7 +46,7 @@ export function Ledger<Row>({ caption, columns, rows, rowKey, isQuiet, empty, fo
                 style={column.width ? { width: column.width } : undefined}
                 className={`h-9 whitespace-nowrap px-2 align-bottom text-13 font-430 text-soft first:pl-0 last:pr-0 ${cellClass(column)}`}
               >
-                {column.sort ? <SortLink column={column} /> : column.title}
+                {column.sort ? <SortLink title={column.title} sort={column.sort} /> : column.title}
               </th>
             ))}
           </tr>
@@ -73,20 +75,16 @@ function cellClass(column: { align?: 'left' | 'right'; from?: 'tablet' | 'desk' 
   return `${column.align === 'right' ? 'text-right' : 'text-left'} ${column.from ? from[column.from] : ''}`
 }
 
-function sortedAs(sort: { now?: 'up' | 'down' } | undefined) {
+export function sortedAs(sort: Sort | undefined) {
   if (!sort) return undefined
   if (!sort.now) return 'none'
   return sort.now === 'up' ? 'ascending' : 'descending'
 }
 
-function SortLink<Row>({ column }: { column: LedgerColumn<Row> }) {
-  const now = column.sort?.now
+export function SortLink({ title, sort: { href, now } }: { title: ReactNode; sort: Sort }) {
   return (
-    <Link
-      href={column.sort?.href ?? ''}
-      className={`inline-flex items-baseline gap-1 ${now ? 'font-700 text-ink' : ''}`}
-    >
-      <span className="underline-offset-4 hover:underline">{column.title}</span>
+    <Link href={href} className={`inline-flex items-baseline gap-1 ${now ? 'font-700 text-ink' : ''}`}>
+      <span className="underline-offset-4 hover:underline">{title}</span>
       <svg viewBox="0 0 8 8" width="8" height="8" aria-hidden className={now ? '' : 'opacity-0'}>
         <path d={now === 'down' ? 'M0 1H8L4 7Z' : 'M0 7H8L4 1Z'} fill="currentColor" />
       </svg>

@@ -52,7 +52,7 @@ const sources: Source[] = [
     rows: () => sql`
       select jar.code, study.code || ' ' || study.title as name, study.code as of
       from jar join study on study.id = jar.study_id`,
-    href: ({ code, of }) => `/studies/${part(of)}/jars#${part(code)}`,
+    href: ({ code, of }) => `/studies/${part(of)}/jars?q=${part(code)}`,
     isByCodeAlone: true,
   },
   {

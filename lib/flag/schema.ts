@@ -5,10 +5,6 @@ export type FlagCause = (typeof flagCauses)[number]
 export const flagStates = ['open', 'answered', 'closed'] as const
 
 export const flagAddress = z.object({ number: z.coerce.number().int().positive().max(2_147_483_647) })
-export const flagFilter = z.object({
-  state: z.enum(flagStates).optional(),
-  study: z.string().trim().min(1).max(40).optional(),
-})
 
 const version = z.number().int().positive()
 const why = z.string().trim().min(1, 'Say why you think so.').max(2000)
@@ -43,8 +39,6 @@ export type FlagClosing = z.output<typeof flagClosing>
 export type FlagSettling = z.output<typeof flagSettling>
 
 export const flagKeys = {
-  list: '/api/flags',
-  ofStudy: (study: string) => `/api/flags?study=${encodeURIComponent(study)}`,
   one: (number: number) => `/api/flags/${number}`,
   comment: (number: number) => `/api/flags/${number}/comments`,
   answer: (number: number) => `/api/flags/${number}/answer`,

@@ -1,6 +1,10 @@
+import { sql, type SqlBool } from 'kysely'
 import type { Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
+import { pageOf } from '@/lib/list/queries/page'
+import { likeTyped, naturally, type Source } from '@/lib/list/queries/source'
+import type { ListQuery } from '@/lib/list/schema'
 
 export type Spindle = { name: string; constant: number }
 export type CalibrationDetail = { sentence?: string; efficiencyPercent?: number; slopeMvPerPh?: number }
@@ -38,10 +42,50 @@ export async function listInstruments(db: Db, _actor: Actor) {
     .select(['newest.dueOn', 'newest.result', 'newest.calibratedAt', 'newest.detail'])
     .orderBy('instrument.isActive', 'desc')
     .orderBy('instrument.kind')
-    .orderBy('instrument.code')
+    .orderBy(sql`instrument.code collate natural_order`)
     .execute()
 }
 export type InstrumentRow = Awaited<ReturnType<typeof listInstruments>>[number]
+
+type Query = ListQuery<'kind' | 'result' | 'use'>
+
+/** A lab's instruments are few enough for the rows of a page to be picked from all of them. */
+export function instrumentSource(db: Db, actor: Actor, { q, filters }: Query): Source<InstrumentRow> {
+  const { kind, result, use } = filters
+  const typed = likeTyped(q)
+  return {
+    from: sql`instrument left join lateral (
+        select due_on, result, calibrated_at from calibration where instrument_id = instrument.id
+        order by calibrated_at desc, id desc limit 1) newest on true`,
+    where: [
+      ...(q
+        ? [
+            sql<SqlBool>`(instrument.code ilike ${typed} or instrument.name ilike ${typed} or instrument.kind ilike ${typed})`,
+          ]
+        : []),
+      ...(kind ? [sql<SqlBool>`instrument.kind = ${kind}`] : []),
+      ...(result ? [sql<SqlBool>`coalesce(newest.result, 'none yet') = ${result}`] : []),
+      ...(use ? [sql<SqlBool>`instrument.is_active = ${use === 'in use'}`] : []),
+    ],
+    id: sql`instrument.id`,
+    idKind: 'uuid',
+    sorts: {
+      code: naturally('instrument.code'),
+      name: naturally('instrument.name'),
+      kind: { by: sql`instrument.kind`, kind: 'text' },
+      result: { by: sql`newest.result`, kind: 'text' },
+      due: { by: sql`newest.due_on`, kind: 'day' },
+      calibrated: { by: sql`newest.calibrated_at`, kind: 'instant' },
+    },
+    rows: async (ids) => (await listInstruments(db, actor)).filter((row) => ids.includes(row.id)),
+    idOf: (row) => row.id,
+  }
+}
+
+export async function listInstrumentPage(db: Db, actor: Actor, query: Query) {
+  return pageOf(db, instrumentSource(db, actor, query), query)
+}
+export type InstrumentsPage = Awaited<ReturnType<typeof listInstrumentPage>>
 
 export async function getInstrument(db: Db, _actor: Actor, id: string) {
   const instrument = await db

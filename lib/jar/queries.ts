@@ -1,3 +1,4 @@
+import { sql } from 'kysely'
 import type { Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
@@ -58,6 +59,13 @@ export async function getJar(db: Db, actor: Actor, scanned: string) {
   const jar = await jars(db, actor).where('jar.code', '=', code).executeTakeFirst()
   if (!jar) throw refuse.notFound(`No jar has the code ${code}. Read the label again.`)
   return jar
+}
+
+/** Jars by their ids, in any order. */
+export async function listJarsOf(db: Db, actor: Actor, ids: string[]) {
+  return jars(db, actor)
+    .where('jar.id', '=', sql<string>`any(${ids}::uuid[])`)
+    .execute()
 }
 
 /** All jars of a study in the order in which they stand: by station, shelf and place. */

@@ -1,10 +1,70 @@
+import { sql, type SqlBool } from 'kysely'
 import type { Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
+import { listChoices } from '@/lib/list/queries/choices'
+import { pageOf } from '@/lib/list/queries/page'
+import { likeTyped, naturally, onDays, type Source } from '@/lib/list/queries/source'
+import type { ListQuery } from '@/lib/list/schema'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
 
-/** Every protocol with its newest version and how many studies follow it. */
+type Query = ListQuery<'state' | 'use' | 'by' | 'from' | 'to'>
+
+/** One page of the protocols, and how many of all there are and are followed. */
+export async function listProtocolPage(db: Db, actor: Actor, query: Query) {
+  const page = await pageOf(db, protocolSource(db, actor, query), query)
+  const { rows } = await sql<{ all: number; followed: number }>`
+    select count(*) as "all", count(*) filter (where ${studiesOfProtocol} > 0) as followed from protocol
+  `.execute(db)
+  return { ...page, counts: rows[0]!, choices: await listChoices(db, actor) }
+}
+export type ProtocolsPage = Awaited<ReturnType<typeof listProtocolPage>>
+
+const studiesOfProtocol = sql`(select count(*) from study join protocol_version used
+  on used.id = study.protocol_version_id where used.protocol_id = protocol.id)`
+
+export function protocolSource(db: Db, _actor: Actor, { q, filters }: Query): Source<ProtocolRow> {
+  const { state, use, by, from, to } = filters
+  const typed = likeTyped(q)
+  return {
+    from: sql`protocol join person on person.id = protocol.created_by
+      join protocol_version newest on newest.protocol_id = protocol.id and newest.number =
+        (select max(number) from protocol_version where protocol_id = protocol.id)`,
+    where: [
+      ...(q ? [sql<SqlBool>`(protocol.code ilike ${typed} or protocol.name ilike ${typed})`] : []),
+      ...(state ? [sql<SqlBool>`newest.state = ${state}`] : []),
+      ...(use ? [sql<SqlBool>`(${studiesOfProtocol} > 0) = ${use === 'followed'}`] : []),
+      ...(by ? [sql<SqlBool>`person.name = ${by}`] : []),
+      ...onDays(sql`protocol.created_at`, from, to),
+    ],
+    id: sql`protocol.id`,
+    idKind: 'uuid',
+    sorts: {
+      code: naturally('protocol.code'),
+      name: naturally('protocol.name'),
+      span: { by: sql`(newest.plan ->> 'endWeeks')::numeric`, kind: 'number' },
+      state: { by: sql`newest.state`, kind: 'text' },
+      studies: { by: studiesOfProtocol, kind: 'number' },
+      by: naturally('person.initials'),
+      begun: { by: sql`protocol.created_at`, kind: 'instant' },
+    },
+    rows: (ids) =>
+      protocols(db)
+        .where(sql<SqlBool>`protocol.id = any(${ids}::uuid[])`)
+        .execute(),
+    idOf: (row) => row.id,
+  }
+}
+
+/** Every protocol, for a choice among them. */
 export async function listProtocols(db: Db, _actor: Actor) {
+  return protocols(db)
+    .orderBy(sql`protocol.code collate natural_order`)
+    .execute()
+}
+
+/** Protocols with their newest version and how many studies follow them. */
+function protocols(db: Db) {
   return db
     .selectFrom('protocol')
     .innerJoin('protocolVersion', 'protocolVersion.protocolId', 'protocol.id')
@@ -34,8 +94,6 @@ export async function listProtocols(db: Db, _actor: Actor) {
         .whereRef('newest.protocolId', '=', 'protocol.id')
         .select((max) => max.fn.max('newest.number').as('number')),
     )
-    .orderBy('protocol.code')
-    .execute()
 }
 export type ProtocolRow = Awaited<ReturnType<typeof listProtocols>>[number]
 

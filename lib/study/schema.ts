@@ -104,20 +104,6 @@ export const studyAddress = z.object({ code: z.string().max(40) })
 export const studyStandings = ['out', 'leaning', 'steady', 'untold'] as const
 export type StudyStanding = (typeof studyStandings)[number]
 
-export const studySorts = ['worst', 'code', 'next'] as const
-
-/** The ledger's own address: what is typed there is what is shown. */
-export const studyFilter = z.object({
-  is: z.enum(['running', 'closed']).catch('running').default('running'),
-  q: z.string().trim().max(80).catch('').default(''),
-  standing: z
-    .enum(['any', ...studyStandings])
-    .catch('any')
-    .default('any'),
-  sort: z.enum(studySorts).catch('worst').default('worst'),
-})
-export type StudyFilter = z.output<typeof studyFilter>
-
 /** One attribute of one batch at one station. */
 export const seriesAddress = z.object({
   batchId: z.uuid(),
@@ -130,8 +116,6 @@ export type SeriesAddress = z.infer<typeof seriesAddress>
 export const workloadKey = '/api/workload'
 
 export const studyKeys = {
-  list: (filter: StudyFilter) =>
-    `/api/studies?${new URLSearchParams({ is: filter.is, q: filter.q, standing: filter.standing, sort: filter.sort })}`,
   start: '/api/studies',
   one: (code: string) => address(code),
   sheet: (code: string) => `${address(code)}/sheet`,
@@ -139,8 +123,6 @@ export const studyKeys = {
   /** What one series is computed from. */
   series: (code: string, { batchId, studyStationId, attribute }: SeriesAddress) =>
     `${address(code)}/series?${new URLSearchParams({ batchId, studyStationId, attribute })}`,
-  readings: (code: string) => `${address(code)}/readings`,
-  jars: (code: string) => `${address(code)}/jars`,
   amendments: (code: string) => `${address(code)}/amendments`,
   end: (code: string) => `${address(code)}/end`,
   follow: (code: string) => `${address(code)}/follow`,

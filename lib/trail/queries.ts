@@ -2,11 +2,70 @@ import { sql, type SqlBool } from 'kysely'
 import type { Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
 import { refuse, type AppError } from '@/lib/http/errors'
-import { trailPageSize, type TrailQuery } from './schema'
+import { getLab } from '@/lib/lab/queries'
+import { listChoices } from '@/lib/list/queries/choices'
+import { pageOf } from '@/lib/list/queries/page'
+import { likeTyped, onDays, type Source } from '@/lib/list/queries/source'
+import type { ListQuery } from '@/lib/list/schema'
+import { trailLines, type TrailLine } from './rules/lines'
+import { tableOf } from './rules/list'
+
+type Query = ListQuery<'what' | 'study' | 'by' | 'from' | 'to'>
+
+/** One page of the record in words, the latest written first. It only grows, so it is not counted. */
+export async function listTrail(db: Db, actor: Actor, query: Query) {
+  const page = await pageOf(db, await trailSource(db, actor, query), query)
+  return { ...page, choices: await listChoices(db, actor) }
+}
+
+export type TrailPage = Awaited<ReturnType<typeof listTrail>>
 
 /** Technicians read their own entries, formulators those of their studies too, QA and managers all. */
-export async function listTrail(db: Db, actor: Actor, query: TrailQuery) {
-  let rows = db
+export async function trailSource(db: Db, actor: Actor, { q, filters }: Query): Promise<Source<TrailLine>> {
+  const { what, study, by, from, to } = filters
+  const typed = likeTyped(q)
+  const names = await namesOf(db)
+  const lab = await getLab(db)
+  return {
+    from: sql`trail`,
+    where: [
+      readableBy(actor),
+      ...(what ? [sql<SqlBool>`trail.table_name = ${tableOf(what) ?? what}`] : []),
+      ...(study ? [isOfStudy(study)] : []),
+      ...(by ? [sql<SqlBool>`trail.actor_id in (select id from person where name = ${by})`] : []),
+      ...onDays(sql`trail.at`, from, to),
+      ...(q
+        ? [
+            sql<SqlBool>`(trail.reason ilike ${typed} or trail.event ilike ${typed}
+              or coalesce(trail.after, trail.before) ->> 'code' ilike ${typed}
+              or coalesce(trail.after, trail.before) ->> 'name' ilike ${typed}
+              or coalesce(trail.after, trail.before) ->> 'title' ilike ${typed}
+              or coalesce(trail.after, trail.before) ->> 'inci_name' ilike ${typed})`,
+          ]
+        : []),
+    ],
+    id: sql`trail.id`,
+    idKind: 'bigint',
+    sorts: { entry: { by: sql`trail.id`, kind: 'number' } },
+    rows: async (ids) => trailLines(await entriesOf(db, ids), lab.timeZone, names),
+    idOf: (line) => String(line.id),
+    isUncounted: true,
+  }
+}
+
+function isOfStudy(code: string) {
+  const id = sql`(select id::text from study where code = ${code})`
+  return sql<SqlBool>`(coalesce(trail.after, trail.before) ->> 'study_id' = ${id}
+    or (trail.table_name = 'study' and trail.row_id = ${id}))`
+}
+
+async function namesOf(db: Db): Promise<Map<string, string>> {
+  const people = await db.selectFrom('person').select(['id', 'name']).execute()
+  return new Map(people.map((person) => [person.id, person.name]))
+}
+
+async function entriesOf(db: Db, ids: string[]) {
+  return db
     .selectFrom('trail')
     .innerJoin('person', 'person.id', 'trail.actorId')
     .select([
@@ -22,27 +81,13 @@ export async function listTrail(db: Db, actor: Actor, query: TrailQuery) {
       sql<unknown>`trail.before - 'content'`.as('before'),
       sql<unknown>`trail.after - 'content'`.as('after'),
       'trail.reason',
-      'trail.requestId',
       'trail.isShifted',
     ])
-    .where(readableBy(actor))
-    .orderBy('trail.id', 'desc')
-    .limit(trailPageSize + 1)
-  if (query.table) rows = rows.where('trail.tableName', '=', query.table)
-  if (query.rowId) rows = rows.where('trail.rowId', '=', query.rowId)
-  if (query.actorId) rows = rows.where('trail.actorId', '=', query.actorId)
-  if (query.studyId)
-    rows = rows.where(
-      sql<SqlBool>`(coalesce(trail.after, trail.before) ->> 'study_id' = ${query.studyId}
-        or (trail.table_name = 'study' and trail.row_id = ${query.studyId}))`,
-    )
-  if (query.before) rows = rows.where('trail.id', '<', query.before)
-  const found = await rows.execute()
-  const entries = found.slice(0, trailPageSize)
-  return { entries, next: found.length > trailPageSize ? (entries.at(-1)?.id ?? null) : null }
+    .where(sql<SqlBool>`trail.id = any(${ids}::bigint[])`)
+    .execute()
 }
 
-export type TrailPage = Awaited<ReturnType<typeof listTrail>>
+export type TrailEntry = Awaited<ReturnType<typeof entriesOf>>[number]
 
 function readableBy(actor: Actor) {
   if (actor.roles.includes('qa') || actor.roles.includes('manager')) return sql<SqlBool>`true`

@@ -55,7 +55,7 @@ it('finds a study, a batch and a jar by part of code or name, whatever the capit
   const [batch] = await find(liv, 'find-1')
   expect(batch).toMatchObject({ kind: 'batch', code: 'FIND-1', href: '/batches/FIND-1' })
   const [jar] = await find(liv, jarCode.toLowerCase())
-  expect(jar).toMatchObject({ kind: 'jar', code: jarCode, href: `/studies/${studyCode}/jars#${jarCode}` })
+  expect(jar).toMatchObject({ kind: 'jar', code: jarCode, href: `/studies/${studyCode}/jars?q=${jarCode}` })
 })
 
 it('takes signs of a pattern for what they are, and finds nothing for nothing', async () => {

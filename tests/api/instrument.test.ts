@@ -80,7 +80,7 @@ describe('instruments and their calibrations', () => {
     expect((await calibrate(balance.id, { ...weight, readG: 100.01 })).body.result).toBe('good')
     expect((await calibrate(balance.id, { ...weight, readG: 99.97 })).body.result).toBe('doubtful')
     const list = await call(listRoute, { cookie: technician.cookie })
-    const row = list.body.find((one: { id: string }) => one.id === balance.id)
+    const row = list.body.rows.find((one: { id: string }) => one.id === balance.id)
     expect(row).toMatchObject({ result: 'doubtful', dueOn: '2026-03-09' })
   })
 

@@ -99,7 +99,7 @@ describe('people', () => {
     expect(rows).toEqual([{ data: { personId: person.id, invitedBy: manager.actor.name } }])
     expect((await call(inviteAgain, { cookie: manager.cookie, params: { id: person.id } })).status).toBe(200)
     const listed = await call(listPeople, { cookie: manager.cookie })
-    expect(listed.body.map((row: { email: string }) => row.email)).toContain('kai@lab.example')
+    expect(listed.body.rows.map((row: { email: string }) => row.email)).toContain('kai@lab.example')
   })
 
   it('S05: an address names one person for ever', async () => {

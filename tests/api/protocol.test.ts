@@ -35,7 +35,7 @@ describe('protocols', () => {
     const second = await create('Another one')
     expect(second.code).not.toBe(first.code)
     const { body } = await call(listRoute, { cookie: formulator.cookie })
-    const row = body.find((one: { code: string }) => one.code === second.code)
+    const row = body.rows.find((one: { code: string }) => one.code === second.code)
     expect(row).toMatchObject({ name: 'Another one', number: 1, state: 'draft' })
   })
 

@@ -244,7 +244,7 @@ describe('the readings of a study', () => {
     const second = await correct(first.id, 5.7, 'A digit slipped.')
     const third = await correct(second, 5.65, 'Read again from the display.')
     const { body } = await call(readingsRoute, { cookie: technician.cookie, params: { code: study.code } })
-    const chain = body.readings.find((one: { current: { id: string } }) => one.current.id === third)
+    const chain = body.rows.find((one: { current: { id: string } }) => one.current.id === third)
     expect(chain.entries.map((entry: { typed: string }) => entry.typed)).toEqual(['5,60', '5.7', '5.65'])
     expect(chain.entries.map((entry: { reason: string | null }) => entry.reason)).toEqual([
       null,

@@ -161,7 +161,7 @@ describe('a case, step by step', () => {
     expect(body.signatures[0]).toMatchObject({ personName: 'Quinn Arbor', meaning: 'approve', belongs: true })
     expect(body.signatures[0].signedAt).toMatch(/Z$/)
     const listed = await call(listOfReports, { cookie: people.client.cookie })
-    expect(listed.body[0].signature).toMatchObject({
+    expect(listed.body.rows[0].signature).toMatchObject({
       personName: 'Quinn Arbor',
       meaning: 'approve',
       zone: 'Europe/Berlin',
@@ -200,9 +200,9 @@ describe('a case, step by step', () => {
   it('a client sees its own report and no case; another client sees nothing', async () => {
     expect((await get(people.client)).status).toBe(403)
     const own = await call(listOfReports, { cookie: people.client.cookie })
-    expect(own.body).toHaveLength(1)
+    expect(own.body.rows).toHaveLength(1)
     const other = await call(listOfReports, { cookie: people.stranger.cookie })
-    expect(other.body).toEqual([])
+    expect(other.body.rows).toEqual([])
     expect((await call(report, { cookie: people.stranger.cookie, params: { code } })).status).toBe(404)
   })
 

@@ -56,7 +56,7 @@ describe('stations', () => {
     expect(twin.answer.status).toBe(422)
     expect((await call(createRoute, { cookie: technician.cookie, body })).status).toBe(403)
     const list = await call(listRoute, { cookie: technician.cookie })
-    expect(list.body.filter((row: { name: string }) => row.name === body.name)).toHaveLength(1)
+    expect(list.body.rows.filter((row: { name: string }) => row.name === body.name)).toHaveLength(1)
   })
 
   it('refuses limits that make no sense, each at its field', async () => {

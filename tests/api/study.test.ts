@@ -418,7 +418,7 @@ describe('a running study', () => {
   it('finds a jar by its code in small letters with spaces, and keeps what it weighed at filling', async () => {
     const { code } = await running()
     const { body } = await call(jarsRoute, { cookie: technician.cookie, params: { code } })
-    const jar = body.jars[0] as { code: string; version: number }
+    const jar = body.rows[0] as { code: string; version: number }
     const typed = `45·${jar.code.toLowerCase().split('').join(' ')}`
     const found = await call(jarRoute, { cookie: technician.cookie, params: { code: typed } })
     expect(found.body).toMatchObject({ code: jar.code, studyCode: code })

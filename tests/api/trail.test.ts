@@ -203,13 +203,11 @@ describe('who reads the trail', () => {
       trx.insertInto('client').values({ id: newId(), name: 'By the technician' }).execute(),
     )
     const own = await call(getTrail, { cookie: technician.cookie })
-    expect(own.body.entries.map((entry: { actorId: string }) => entry.actorId)).toEqual([
+    expect(own.body.rows.map((entry: { actorId: string }) => entry.actorId)).toEqual([
       technician.actor.personId,
     ])
     const all = await call(getTrail, { cookie: qa.cookie })
-    expect(new Set(all.body.entries.map((entry: { actorId: string }) => entry.actorId)).size).toBeGreaterThan(
-      2,
-    )
+    expect(new Set(all.body.rows.map((entry: { actorId: string }) => entry.actorId)).size).toBeGreaterThan(2)
     expect((await call(getTrail, { cookie: client.cookie })).status).toBe(403)
   })
 })

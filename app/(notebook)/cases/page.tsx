@@ -2,34 +2,39 @@ import type { Metadata } from 'next'
 import { CaseList } from '@/components/shelf-case/case-list'
 import { Heading } from '@/components/ui/heading'
 import { page } from '@/lib/http/page'
-import { listCases } from '@/lib/shelf-case/queries/read'
+import { getLab } from '@/lib/lab/queries'
+import { listCases } from '@/lib/shelf-case/queries/list'
+import { caseList } from '@/lib/shelf-case/rules/list'
 
 export const permission = 'case.read'
 export const metadata: Metadata = { title: 'Cases' }
 
-export default async function CasesPage() {
+type Props = { searchParams: Promise<Record<string, string | string[] | undefined>> }
+
+export default async function CasesPage({ searchParams }: Props) {
   const { actor, db } = await page(permission)
-  const cases = await listCases(db, actor)
-  const waiting = cases.filter((c) => c.state === 'put forward')
-  const signed = cases.filter((c) => c.state === 'signed')
+  const query = caseList.query.parse(await searchParams)
+  const found = await listCases(db, actor, query)
+  const { timeZone } = await getLab(db)
+  const { waiting, signed, first } = found.counts
   return (
     <>
       <Heading
         crumb="Shelf-life cases, newest first"
         headline={
-          waiting.length === 0 ? (
+          waiting === 0 ? (
             <>No case waits for a signature</>
           ) : (
             <>
-              <b>{waiting.length === 1 ? waiting[0]?.code : waiting.length}</b>{' '}
-              {waiting.length === 1 ? 'waits for a signature' : 'cases wait for a signature'}
+              <b>{waiting === 1 ? first : waiting}</b>{' '}
+              {waiting === 1 ? 'waits for a signature' : 'cases wait for a signature'}
             </>
           )
         }
-        sentence={`${signed.length === 1 ? 'One shelf life is' : `${signed.length} shelf lives are`} signed and in force. A case is begun from a study’s sheet.`}
+        sentence={`${signed === 1 ? 'One shelf life is' : `${signed} shelf lives are`} signed and in force. A case is begun from a study’s sheet.`}
       />
-      <div className="mt-8">
-        <CaseList cases={cases} />
+      <div className="mt-5">
+        <CaseList page={found} query={query} timeZone={timeZone} />
       </div>
     </>
   )

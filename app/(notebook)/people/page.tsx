@@ -4,19 +4,24 @@ import { People } from '@/components/person/people'
 import { listClients } from '@/lib/client/queries'
 import { clientsKey } from '@/lib/client/schema'
 import { page } from '@/lib/http/page'
+import { getLab } from '@/lib/lab/queries'
 import { listPeople } from '@/lib/person/queries'
-import { peopleKey } from '@/lib/person/schema'
+import { personList } from '@/lib/person/rules'
 
 export const permission = 'person.manage'
 export const metadata: Metadata = { title: 'People' }
 
-export default async function PeoplePage() {
+type Props = { searchParams: Promise<Record<string, string | string[] | undefined>> }
+
+export default async function PeoplePage({ searchParams }: Props) {
   const { actor, db } = await page(permission)
-  const people = await listPeople(db, actor)
+  const query = personList.query.parse(await searchParams)
+  const people = await listPeople(db, actor, query)
   const clients = await listClients(db, actor)
+  const { timeZone } = await getLab(db)
   return (
-    <SWRConfig value={{ fallback: { [peopleKey]: people, [clientsKey]: clients } }}>
-      <People ownId={actor.personId} />
+    <SWRConfig value={{ fallback: { [clientsKey]: clients } }}>
+      <People page={people} query={query} timeZone={timeZone} ownId={actor.personId} />
     </SWRConfig>
   )
 }

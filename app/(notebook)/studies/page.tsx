@@ -1,11 +1,10 @@
 import type { Metadata } from 'next'
-import { SWRConfig } from 'swr'
 import { StudyLedger } from '@/components/study/study-ledger'
 import { may } from '@/lib/auth/permissions'
 import { page } from '@/lib/http/page'
 import { getLab } from '@/lib/lab/queries'
 import { listStudies } from '@/lib/study/queries/ledger'
-import { studyFilter, studyKeys } from '@/lib/study/schema'
+import { studyList } from '@/lib/study/rules/list'
 
 export const permission = 'study.read'
 export const metadata: Metadata = { title: 'Studies' }
@@ -14,11 +13,7 @@ type Props = { searchParams: Promise<Record<string, string | string[] | undefine
 
 export default async function StudiesPage({ searchParams }: Props) {
   const { actor, db } = await page(permission)
-  const filter = studyFilter.parse(await searchParams)
-  const [lab, ledger] = [await getLab(db), await listStudies(db, actor, filter)]
-  return (
-    <SWRConfig value={{ fallback: { [studyKeys.list(filter)]: ledger } }}>
-      <StudyLedger filter={filter} mayStart={may(actor, 'study.write')} labName={lab.name} />
-    </SWRConfig>
-  )
+  const query = studyList.query.parse(await searchParams)
+  const [lab, ledger] = [await getLab(db), await listStudies(db, actor, query)]
+  return <StudyLedger ledger={ledger} query={query} mayStart={may(actor, 'study.write')} lab={lab} />
 }

@@ -1,14 +1,10 @@
 import type { Metadata } from 'next'
-import { readTrail } from '@/components/trail/trail-address'
-import { trailLines } from '@/components/trail/trail-lines'
 import { TrailView } from '@/components/trail/trail-view'
 import type { Actor } from '@/lib/auth/actor'
-import { AppError } from '@/lib/http/errors'
 import { page } from '@/lib/http/page'
 import { getLab } from '@/lib/lab/queries'
-import { listPeople } from '@/lib/person/queries'
-import { getStudyHead } from '@/lib/study/queries/head'
 import { listTrail } from '@/lib/trail/queries'
+import { trailList } from '@/lib/trail/rules/list'
 
 export const permission = 'trail.read'
 export const metadata: Metadata = { title: 'Record' }
@@ -17,33 +13,10 @@ type Props = { searchParams: Promise<Record<string, string | string[] | undefine
 
 export default async function TrailPage({ searchParams }: Props) {
   const { actor, db } = await page(permission)
-  const shown = readTrail(await searchParams)
+  const query = trailList.query.parse(await searchParams)
+  const trail = await listTrail(db, actor, query)
   const { timeZone } = await getLab(db)
-  const study = shown.study
-    ? await getStudyHead(db, actor, shown.study).catch((thrown: unknown) => {
-        if (thrown instanceof AppError && thrown.status === 404) return null
-        throw thrown
-      })
-    : undefined
-  const trail =
-    study === null
-      ? { entries: [], next: null }
-      : await listTrail(db, actor, {
-          table: shown.table ?? undefined,
-          before: shown.before ?? undefined,
-          studyId: study?.id,
-        })
-  const people = new Map((await listPeople(db, actor)).map((person) => [person.id, person.name]))
-  return (
-    <TrailView
-      shown={shown}
-      isStudyKnown={study !== null}
-      lines={trailLines(trail, timeZone, people)}
-      next={trail.next}
-      timeZone={timeZone}
-      scope={scopeOf(actor)}
-    />
-  )
+  return <TrailView page={trail} query={query} timeZone={timeZone} scope={scopeOf(actor)} />
 }
 
 function scopeOf({ roles }: Actor): string {

@@ -1,9 +1,9 @@
 import { listFlags } from '@/lib/flag/queries/list'
-import { flagFilter } from '@/lib/flag/schema'
+import { flagList } from '@/lib/flag/rules/list'
 import { read } from '@/lib/http/route'
 
 export const GET = read({
   permission: 'reading.read',
-  query: flagFilter,
+  query: flagList.query,
   handler: ({ db, actor, query }) => listFlags(db, actor, query),
 })

@@ -1,11 +1,13 @@
 import { read, write } from '@/lib/http/route'
 import { createInstrument } from '@/lib/instrument/commands'
-import { listInstruments } from '@/lib/instrument/queries'
+import { listInstrumentPage } from '@/lib/instrument/queries'
+import { instrumentList } from '@/lib/instrument/rules'
 import { newInstrument } from '@/lib/instrument/schema'
 
 export const GET = read({
   permission: 'instrument.read',
-  handler: ({ db, actor }) => listInstruments(db, actor),
+  query: instrumentList.query,
+  handler: ({ db, actor, query }) => listInstrumentPage(db, actor, query),
 })
 
 export const POST = write({

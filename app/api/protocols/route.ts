@@ -1,11 +1,13 @@
 import { read, write } from '@/lib/http/route'
 import { createProtocol } from '@/lib/protocol/commands/write-protocol'
-import { listProtocols } from '@/lib/protocol/queries'
+import { listProtocolPage } from '@/lib/protocol/queries'
+import { protocolList } from '@/lib/protocol/rules/list'
 import { newProtocol } from '@/lib/protocol/schema'
 
 export const GET = read({
   permission: 'protocol.read',
-  handler: ({ db, actor }) => listProtocols(db, actor),
+  query: protocolList.query,
+  handler: ({ db, actor, query }) => listProtocolPage(db, actor, query),
 })
 
 export const POST = write({

@@ -1,11 +1,13 @@
 import { read, write } from '@/lib/http/route'
 import { createStation } from '@/lib/station/commands/keep-station'
-import { listStations } from '@/lib/station/queries/stations'
+import { listStationPage } from '@/lib/station/queries/stations'
+import { stationList } from '@/lib/station/rules/list'
 import { newStation } from '@/lib/station/schema'
 
 export const GET = read({
   permission: 'station.read',
-  handler: ({ db, actor }) => listStations(db, actor),
+  query: stationList.query,
+  handler: ({ db, actor, query }) => listStationPage(db, actor, query),
 })
 
 export const POST = write({

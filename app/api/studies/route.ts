@@ -1,11 +1,12 @@
 import { read, write } from '@/lib/http/route'
 import { startStudy } from '@/lib/study/commands/start-study'
 import { listStudies } from '@/lib/study/queries/ledger'
-import { startedStudy, studyFilter } from '@/lib/study/schema'
+import { studyList } from '@/lib/study/rules/list'
+import { startedStudy } from '@/lib/study/schema'
 
 export const GET = read({
   permission: 'study.read',
-  query: studyFilter,
+  query: studyList.query,
   handler: ({ db, actor, query }) => listStudies(db, actor, query),
 })
 

@@ -1,9 +1,9 @@
 import { read } from '@/lib/http/route'
 import { listTrail } from '@/lib/trail/queries'
-import { trailQuery } from '@/lib/trail/schema'
+import { trailList } from '@/lib/trail/rules/list'
 
 export const GET = read({
   permission: 'trail.read',
-  query: trailQuery,
+  query: trailList.query,
   handler: ({ db, actor, query }) => listTrail(db, actor, query),
 })

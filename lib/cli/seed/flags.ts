@@ -1,12 +1,16 @@
 import { answerFlag } from '@/lib/flag/commands/answer'
 import { setAside } from '@/lib/flag/commands/set-aside'
-import { listFlags } from '@/lib/flag/queries/list'
+import { flagSource, type FlagLine } from '@/lib/flag/queries/list'
+import { flagList } from '@/lib/flag/rules/list'
+import { everyRow } from '@/lib/list/queries/every-row'
 import { daysAgo, type Filling } from './context'
 
 /** Old flags were answered in their time; what was raised in the last weeks still waits for somebody. */
 export async function answerFlags(filling: Filling): Promise<void> {
   const { liv, rune } = filling.people
-  const open = (await listFlags(filling.db, liv, { state: 'open' })).toSorted((a, b) => a.number - b.number)
+  const all = flagList.query.parse({ state: 'open', sort: 'number' })
+  const open: FlagLine[] = []
+  for await (const flag of everyRow(filling.db, flagSource(filling.db, liv, all), all)) open.push(flag)
   const recent = daysAgo(filling, 16)
   for (const flag of open) {
     const raised = new Date(flag.raisedAt)

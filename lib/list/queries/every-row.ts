@@ -22,7 +22,7 @@ export async function* everyRow<Row>(db: Db, source: Source<Row>, query: ListQue
 export async function countUpTo<Row>(db: Db, source: Source<Row>, most: number): Promise<number> {
   const { rows } = await sql<{ count: number }>`
     select count(*) as count from (
-      select 1 from ${source.from} where ${all(source.where)} limit ${sql.lit(most + 1)}) as some
+      select 1 from ${source.from} where ${all(source.where)} limit ${sql.lit(most + 1)}) as found
   `.execute(db)
   return rows[0]!.count
 }

@@ -8,7 +8,6 @@ import { assertApprovedProtocol } from '@/lib/shelf-case/rules/refusals'
 import { signatureHash, type SignedFacts } from '@/lib/shelf-case/queries/signature'
 import { loadEvidence, loadStays } from '@/lib/shelf-case/queries/evidence'
 
-export type CaseRow = Awaited<ReturnType<typeof listCases>>[number]
 export type CaseDetail = Awaited<ReturnType<typeof getCase>>
 export type ComputedCase = Awaited<ReturnType<typeof computeFor>>
 
@@ -26,33 +25,6 @@ const columns = [
   's.title as studyTitle',
   'p.initials as putForwardBy',
 ] as const
-
-/** All cases for the laboratory; for a client only the signed ones of its shared studies. */
-export async function listCases(db: Db | Trx, actor: Actor) {
-  let query = db
-    .selectFrom('shelfCase as c')
-    .innerJoin('study as s', 's.id', 'c.studyId')
-    .leftJoin('person as p', 'p.id', 'c.putForwardBy')
-    .select(columns)
-    .select((eb) =>
-      eb
-        .selectFrom('signature as g')
-        .select('g.signedAt')
-        .whereRef('g.shelfCaseId', '=', 'c.id')
-        .where('g.meaning', '=', 'approve')
-        .orderBy('g.signedAt', 'desc')
-        .limit(1)
-        .as('signedAt'),
-    )
-    .orderBy('c.code', 'desc')
-    .limit(500)
-  if (isClientOnly(actor))
-    query = query
-      .where('c.state', 'in', ['signed', 'superseded'])
-      .where('s.isShared', '=', true)
-      .where('s.clientId', '=', actor.clientId)
-  return query.execute()
-}
 
 /** One case with its frozen content, its signatures and whether each still belongs to that content. */
 export async function getCase(db: Db | Trx, actor: Actor, code: string) {

@@ -1,5 +1,5 @@
 import type { SeriesFinding, Standing } from '@/lib/science/series'
-import type { StudyFilter, studySorts } from '@/lib/study/schema'
+import type { ListQuery } from '@/lib/list/schema'
 import { worstOf, type CellState, type Posture } from './cells'
 import { capital, counted, numberWord } from './words'
 
@@ -135,40 +135,33 @@ function whoIsNext(
   return hasPulls ? 'Bench pulls' : `${study.startedBy} ends it`
 }
 
-export function sorted(rows: LedgerRow[], sort: (typeof studySorts)[number]): LedgerRow[] {
-  if (sort === 'code') return rows
-  if (sort === 'next') {
-    return rows.toSorted((a, b) => (a.nextPullOn ?? '9999').localeCompare(b.nextPullOn ?? '9999'))
-  }
-  return rows.toSorted(
-    (a, b) =>
-      ranks.indexOf(b.standing) - ranks.indexOf(a.standing) ||
-      Number(b.worst?.isPending ?? false) - Number(a.worst?.isPending ?? false) ||
-      (b.worst?.used ?? 0) - (a.worst?.used ?? 0),
-  )
+/** Counts of all that is searched for, whatever page is shown. */
+export type LedgerSummary = {
+  total: number
+  out: number
+  leaning: number
+  due: number
+  done: number
+  studiesToday: number
 }
 
 /** "Two of 18 studies are out, three are leaning". */
-export function ledgerHeadline(rows: LedgerRow[], filter: StudyFilter) {
-  const count = (standing: Standing) => rows.filter((row) => row.standing === standing).length
-  const [out, leaning] = [count('out'), count('leaning')]
-  const todays = rows.filter((row) => row.isToday)
-  const due = todays.reduce((sum, row) => sum + row.jarsNext.due, 0)
-  const done = todays.reduce((sum, row) => sum + row.jarsNext.done, 0)
+export function ledgerHeadline(summary: LedgerSummary, query: ListQuery) {
+  const { total, out, leaning, due, done, studiesToday } = summary
+  const isClosed = query.filters['is'] === 'closed'
   return {
-    headline: headline(rows.length, out, leaning, filter),
-    sentence:
-      filter.is === 'closed'
-        ? ''
-        : due === 0
-          ? 'No jar is due today.'
-          : `${capital(counted(due, 'jar'))} ${due === 1 ? 'is' : 'are'} due today in ${counted(todays.length, 'study', 'studies')}: ${numberWord(done) === 'no' ? 'none is' : `${numberWord(done)} ${done === 1 ? 'is' : 'are'}`} in${due > done ? `, ${numberWord(due - done)} still to be read` : ''}.`,
+    headline: headline(total, out, leaning, { q: query.q, isClosed }),
+    sentence: isClosed
+      ? ''
+      : due === 0
+        ? 'No jar is due today.'
+        : `${capital(counted(due, 'jar'))} ${due === 1 ? 'is' : 'are'} due today in ${counted(studiesToday, 'study', 'studies')}: ${numberWord(done) === 'no' ? 'none is' : `${numberWord(done)} ${done === 1 ? 'is' : 'are'}`} in${due > done ? `, ${numberWord(due - done)} still to be read` : ''}.`,
   }
 }
 
-function headline(total: number, out: number, leaning: number, filter: StudyFilter) {
+function headline(total: number, out: number, leaning: number, filter: { q: string; isClosed: boolean }) {
   const studies = total === 1 ? 'study' : 'studies'
-  const kind = filter.is === 'closed' ? 'ended ' : ''
+  const kind = filter.isClosed ? 'ended ' : ''
   if (total === 0) {
     return filter.q
       ? [`No ${kind || 'running '}study has ${filter.q}`, '']
@@ -176,7 +169,7 @@ function headline(total: number, out: number, leaning: number, filter: StudyFilt
   }
   if (out > 0) {
     const rest = leaning > 0 ? `, ${numberWord(leaning)} ${leaning === 1 ? 'is' : 'are'} leaning` : ''
-    if (total === 1) return ['The one study', ` ${filter.is === 'closed' ? 'that ended ' : ''}is out`]
+    if (total === 1) return ['The one study', ` ${filter.isClosed ? 'that ended ' : ''}is out`]
     return [
       `${capital(numberWord(out))} of ${numberWord(total)}`,
       ` ${kind}${studies} ${out === 1 ? 'is' : 'are'} out${rest}`,

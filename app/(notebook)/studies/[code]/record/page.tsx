@@ -2,11 +2,10 @@ import type { Metadata } from 'next'
 import { studyRights } from '@/components/study/rights'
 import { StudyRecord } from '@/components/study/study-record'
 import { page } from '@/lib/http/page'
-import { getLab } from '@/lib/lab/queries'
 import { getStudyHead, listStudyBatches } from '@/lib/study/queries/head'
 import { headOf } from '@/lib/study/queries/sheet'
 import { listTrail } from '@/lib/trail/queries'
-import { trailQuery } from '@/lib/trail/schema'
+import { trailList } from '@/lib/trail/rules/list'
 import { found } from '../../found'
 
 export const permission = 'trail.read'
@@ -23,17 +22,17 @@ export async function generateMetadata({ params }: Props): Promise<Metadata> {
 export default async function RecordPage({ params, searchParams }: Props) {
   const { actor, db } = await page(permission)
   const study = await found(getStudyHead(db, actor, decodeURIComponent((await params).code)))
-  const before = trailQuery.shape.before.catch(undefined).parse((await searchParams)['before'])
+  const { order, place } = trailList.query.parse(await searchParams)
+  const query = { ...trailList.query.parse({ study: study.code }), order, place }
   const batches = await listStudyBatches(db, study.id)
-  const trail = await listTrail(db, actor, { studyId: study.id, ...(before ? { before } : {}) })
-  const lab = await getLab(db)
+  const trail = await listTrail(db, actor, query)
   return (
     <StudyRecord
       study={headOf(study)}
       batches={batches}
       rights={studyRights(actor)}
       trail={trail}
-      timeZone={lab.timeZone}
+      query={query}
     />
   )
 }

@@ -1,9 +1,11 @@
 import { read } from '@/lib/http/route'
-import { getStudyJars } from '@/lib/study/queries/jars'
+import { listStudyJars } from '@/lib/study/queries/jars'
+import { jarList } from '@/lib/study/rules/jar-list'
 import { studyAddress } from '@/lib/study/schema'
 
 export const GET = read({
   permission: 'bench.read',
   params: studyAddress,
-  handler: ({ db, actor, params }) => getStudyJars(db, actor, params.code),
+  query: jarList.query,
+  handler: ({ db, actor, params, query }) => listStudyJars(db, actor, params.code, query),
 })

@@ -1,13 +1,15 @@
 import { minuteText } from '@/lib/report/rules'
 import { dayIn, spokenDay } from '@/lib/study/rules/calendar'
 import { capital } from '@/lib/study/rules/words'
-import type { TrailPage } from '@/lib/trail/queries'
-import { aboutRow, changesOf, type Change } from './trail-changes'
-import { actWord, thingWord } from './trail-words'
+import type { TrailEntry } from '../queries'
+import { aboutRow, changesOf, type Change } from './changes'
+import { actWord, thingWord } from './words'
 
 /** One entry as it is read: words only, so that a case's whole frozen content does not travel with its page. */
 export type TrailLine = {
   id: number
+  at: string
+  actorId: string
   who: string
   when: string
   day: string
@@ -24,12 +26,14 @@ export type TrailLine = {
 }
 
 export function trailLines(
-  { entries }: TrailPage,
+  entries: readonly TrailEntry[],
   zone: string,
   people: ReadonlyMap<string, string>,
 ): TrailLine[] {
   return entries.map((entry) => ({
     id: entry.id,
+    at: entry.at,
+    actorId: entry.actorId,
     who: entry.actorName,
     when: minuteText(entry.at, zone),
     day: spokenDay(dayIn(zone, entry.at)),

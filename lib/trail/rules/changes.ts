@@ -2,7 +2,7 @@ import { minuteText } from '@/lib/report/rules'
 import { attributeName } from '@/lib/study/rules/finding'
 import { shownWithUnit } from '@/lib/study/rules/words'
 import { spokenDay } from '@/lib/study/rules/calendar'
-import { fieldUnit, fieldWord } from './trail-words'
+import { fieldUnit, fieldWord } from './words'
 
 type Row = Record<string, unknown>
 export type Change = { field: string; before: string | null; after: string | null }
