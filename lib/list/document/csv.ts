@@ -14,7 +14,7 @@ function field(cell: Cell): string {
   if (cell === null) return ''
   if (typeof cell === 'number') return String(cell)
   const text = typeof cell === 'string' ? harmless(cell) : cell.text
-  return /[",\r\n]|^\s|\s$/.test(text) ? `"${text.replaceAll('"', '""')}"` : text
+  return /[",\t\r\n]|^\s|\s$/.test(text) ? `"${text.replaceAll('"', '""')}"` : text
 }
 
 /** What begins as a formula does. A text that is a plain number, such as a reading typed as -3,2, computes nothing. */
