@@ -207,17 +207,14 @@ describe.each(lists.map(({ list, ...rest }) => ({ name: list.name, list, ...rest
             value,
             200,
           ])
-      for (const query of [
+      const odd: Record<string, string>[] = [
         { sort: 'constructor', order: 'up', columns: '__proto__,x', after: 'x' },
         { after: Buffer.from('["9","9"]').toString('base64url') },
         { before: Buffer.from('[null,"0197"]').toString('base64url') },
         { after: Buffer.from(`["2026-99-99 00:00:00+00","${newId()}"]`).toString('base64url') },
         { q: '\u0000' },
-      ])
-        expect([query, (await look(route, query as Record<string, string>, who())).status]).toEqual([
-          query,
-          200,
-        ])
+      ]
+      for (const query of odd) expect([query, (await look(route, query, who())).status]).toEqual([query, 200])
     })
   },
 )

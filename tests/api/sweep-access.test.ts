@@ -91,7 +91,7 @@ it('A05: every route × every role answers as the table says', async () => {
       // Nothing here exists and nothing sent is complete, so a fault would be ours.
       expect([cell, answer.status < 500]).toEqual([cell, true])
     }
-})
+}, 90_000)
 
 it('A05: somebody without a role may do nothing', async () => {
   const { cookie } = await t.person([])

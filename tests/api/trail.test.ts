@@ -171,6 +171,7 @@ it('every table has its trail or is named as exempt', async () => {
       .map((row) => row.name)
       .sort(),
   ).toEqual([
+    'formula_figure',
     'idempotency_answer',
     'kysely_migration',
     'kysely_migration_lock',
