@@ -58,5 +58,4 @@ export const caseSignature = z
   })
 export type CaseSignature = z.infer<typeof caseSignature>
 
-export const caseListKey = '/api/cases'
 export const caseKey = (code: string) => `/api/cases/${code}`

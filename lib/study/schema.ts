@@ -102,7 +102,6 @@ export const following = z.object({ isFollowing: z.boolean() })
 export const studyAddress = z.object({ code: z.string().max(40) })
 
 export const studyStandings = ['out', 'leaning', 'steady', 'untold'] as const
-export type StudyStanding = (typeof studyStandings)[number]
 
 /** One attribute of one batch at one station. */
 export const seriesAddress = z.object({

@@ -1,21 +1,13 @@
 import { sql, type SqlBool } from 'kysely'
 import type { Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
-import { listJars, listJarsOf, type JarRow } from '@/lib/jar/queries'
+import { listJarsOf, type JarRow } from '@/lib/jar/queries'
 import { listChoices } from '@/lib/list/queries/choices'
 import { pageOf } from '@/lib/list/queries/page'
 import { likeTyped, naturally, type Source } from '@/lib/list/queries/source'
 import type { ListQuery } from '@/lib/list/schema'
 import { getStudyHead, listStudyBatches } from './head'
 import { headOf } from './sheet'
-
-export async function getStudyJars(db: Db, actor: Actor, code: string) {
-  const study = await getStudyHead(db, actor, code)
-  const batches = await listStudyBatches(db, study.id)
-  const jars = await listJars(db, actor, study.id)
-  return { study: headOf(study), batches, jars }
-}
-export type StudyJars = Awaited<ReturnType<typeof getStudyJars>>
 
 type Query = ListQuery<'station' | 'batch' | 'kind' | 'state'>
 
