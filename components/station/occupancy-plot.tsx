@@ -10,7 +10,7 @@ type Props = {
   /** With the study that is being planned. */
   withStudy?: OccupancyStep[]
   height?: number
-  /** Both plots of a page reach as far. */
+  /** Several plots of a page reach as far. */
   until?: string
 }
 
@@ -37,6 +37,7 @@ export function OccupancyPlot({ capacity, steps, withStudy, height = 130, until 
   const y = (taken: number) => 14 + (1 - taken / most) * (floor - 14)
   const line = (own: OccupancyStep[]) =>
     own
+      .filter((step) => step.on <= last)
       .map((step, index) => (index === 0 ? `M${left} ${y(step.taken)}` : `H${x(step.on)}V${y(step.taken)}`))
       .join('') + `H${width}`
   const planned = withStudy ? line(withStudy) : null

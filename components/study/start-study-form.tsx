@@ -155,7 +155,7 @@ export function StartStudyForm({ offer, batchCode, protocolCode }: Props) {
               </div>
             </div>
           </Section>
-          {plan ? <StationChoices offer={offer} draft={draft} set={set} fields={fields} /> : null}
+          {plan ? <StationChoices {...{ offer, draft, set, fields }} endWeeks={plan.endWeeks} /> : null}
           {plan ? <StartCalendar plan={plan} batchCount={draft.batchIds.length} lab={offer.lab} /> : null}
         </div>
         <div className="grid content-start gap-8">

@@ -7,7 +7,7 @@ import { Field } from '@/components/ui/field'
 import { Section } from '@/components/ui/section'
 import { Select } from '@/components/ui/select'
 import { StationLabel } from '@/components/ui/station-label'
-import { periodText } from '@/lib/station/rules/downtime'
+import { downtimeText } from '@/lib/station/rules/downtime'
 import { capacityOf } from '@/lib/station/rules/places'
 import { addDays } from '@/lib/study/rules/calendar'
 import type { RoomOption } from '@/lib/study/rules/room'
@@ -18,19 +18,17 @@ import { placesOf, type Draft, type Offer, type StartPlace } from './start-state
 type Props = {
   offer: Offer
   draft: Draft
+  /** How long the study runs. */
+  endWeeks: number
   set: (change: Partial<Draft>) => void
   fields: Record<string, string>
 }
 
 /** Which of the lab's stations keeps what the protocol asks for, its places before and with this study, and what starts. */
-export function StationChoices({ offer, draft, set, fields }: Props) {
+export function StationChoices({ offer, draft, endWeeks, set, fields }: Props) {
   const places = placesOf(offer, draft)
   const leftOut = places.filter((place) => !place.isStarted)
-  const ends = places.flatMap(({ before, after }) => [...before, ...after].map((step) => step.on))
-  const until = addDays(
-    ends.reduce((last, on) => (on > last ? on : last), offer.lab.today),
-    7,
-  )
+  const until = addDays(offer.lab.today, Math.round(endWeeks * 7) + 14)
   return (
     <Section title="Where" sentence="Places from today on; the strong line is with this study.">
       <ul className="divide-y divide-hair">
@@ -135,8 +133,8 @@ function Place({
         ) : null}
         {place.downtimes.map((down) => (
           <p key={down.fromOn} className="text-15">
-            Out of use {periodText(down)} ({down.reason}): {listed(down.pulls)}{' '}
-            {down.pulls.length === 1 ? 'falls' : 'fall'} in.
+            Out of use {downtimeText(down)}: {listed(down.pulls)} {down.pulls.length === 1 ? 'falls' : 'fall'}{' '}
+            in.
           </p>
         ))}
         {place.options.length > 0 ? (

@@ -1,6 +1,6 @@
 import type { ShownStudy } from '@/lib/study/queries/sheet'
 import { spokenDay } from '@/lib/study/rules/calendar'
-import { periodText } from '@/lib/station/rules/downtime'
+import { downtimeText } from '@/lib/station/rules/downtime'
 import { capital, counted, listed } from '@/lib/study/rules/words'
 
 /** What whoever reads the sheet must know before its figures: what it can never carry, and what was changed. */
@@ -33,7 +33,7 @@ export function StudyNotices({ study }: { study: ShownStudy }) {
         ))}
       {downtimes.map((down) => (
         <p key={`${down.name} ${down.fromOn}`} className="mt-2 text-15">
-          {capital(down.name)} is out of use {periodText(down)} ({down.reason}):{' '}
+          {capital(down.name)} is out of use {downtimeText(down)}:{' '}
           {down.pulls.length === 0
             ? 'no pull of this study falls in.'
             : `${listed(down.pulls)} ${down.pulls.length === 1 ? 'falls' : 'fall'} in.`}

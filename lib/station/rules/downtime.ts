@@ -15,6 +15,11 @@ export function periodText({ fromOn, toOn }: Period): string {
   return `from ${from} to ${spokenDay(toOn)}`
 }
 
+/** "from 3 to 5 Mar 2026 (the fan is replaced)". */
+export function downtimeText({ reason, ...period }: Period & { reason: string }): string {
+  return `${periodText(period)} (${reason.replace(/\.$/, '')})`
+}
+
 /** Whether a pull can still be taken on a day of its own window before or after; null where it does not fall in. */
 export function pullInDowntime(
   period: Period,
