@@ -4,19 +4,21 @@ import type { Shape, Step } from '../marks/shape'
 
 /** Side length in modules, and the dark ones as runs: from where, and how many. */
 export type Qr = { size: number; runs: [x: number, y: number, length: number][] }
-export type Label = { id: string; code: string; lines: string[]; qr: Qr }
+/** `code` is what stands for the eye, station first; `jarCode` is what the square holds. */
+export type Label = { id: string; jarCode: string; code: string; lines: string[]; qr: Qr }
 
 /** Points of the PDF in a millimetre. */
 export const pointsPerMm = 72 / 25.4
 
-/** One sheet of labels in points from its upper left corner: screen, printer and PDF draw the same shapes. */
-export function sheetShapes(grid: LabelGrid, labels: { index: number; item: Label }[]): Shape[] {
-  return labels.flatMap(({ index, item }) => labelShapes(grid, labelPlace(grid, index), item))
-}
-
-function labelShapes(grid: LabelGrid, at: { xMm: number; yMm: number }, label: Label): Shape[] {
+/** One label of a sheet in points from the sheet's upper left corner: screen, printer and PDF draw the same shapes. */
+export function labelShapes(
+  grid: LabelGrid,
+  index: number,
+  label: Label,
+): { square: Shape[]; words: Shape[] } {
+  const at = labelPlace(grid, index)
   const layout = labelLayout(grid)
-  if (!layout) return []
+  if (!layout) return { square: [], words: [] }
   const x = (mm: number) => (at.xMm + mm) * pointsPerMm
   const y = (mm: number) => (at.yMm + mm) * pointsPerMm
   const { square, text, codeMm, lineMm } = layout
@@ -34,19 +36,19 @@ function labelShapes(grid: LabelGrid, at: { xMm: number; yMm: number }, label: L
     fill: 'ink',
     mono: isCode,
   })
-  return [
-    { kind: 'path', steps: modules(label.qr, x(square.xMm), y(square.yMm), square.sideMm), fill: 'ink' },
-    words(begin + codeMm * 0.85, codeMm, label.code, true),
-    ...lines.map((line, row) => {
-      const fitted = fitLine(line, text.widthMm, lineMm)
-      return words(
-        begin + codeMm * codeLead + (row + 0.85) * lineMm * lineLead,
-        fitted.sizeMm,
-        fitted.text,
-        false,
-      )
-    }),
-  ]
+  return {
+    square: [
+      { kind: 'path', steps: modules(label.qr, x(square.xMm), y(square.yMm), square.sideMm), fill: 'ink' },
+    ],
+    words: [
+      words(begin + codeMm * 0.85, codeMm, label.code, true),
+      ...lines.map((line, row) => {
+        const fitted = fitLine(line, text.widthMm, lineMm)
+        const at = begin + codeMm * codeLead + (row + 0.85) * lineMm * lineLead
+        return words(at, fitted.sizeMm, fitted.text, false)
+      }),
+    ],
+  }
 }
 
 /** The dark modules as one path inside their quiet zone. */

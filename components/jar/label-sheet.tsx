@@ -1,7 +1,7 @@
 import type { CSSProperties } from 'react'
 import { labelPlace, labelsPerSheet, papers, type LabelGrid } from '@/lib/label/rules/grid'
 import { Drawn } from '../marks/drawn'
-import { pointsPerMm, sheetShapes, type Label } from './label-shapes'
+import { pointsPerMm, labelShapes, type Label } from './label-shapes'
 
 /** A label is paper in either theme: a scanner wants black on white. */
 const paperInk = { '--ink': '#000', background: '#fff', color: '#000' } as CSSProperties
@@ -20,7 +20,7 @@ export function LabelSheet({
   return (
     <svg
       viewBox={`0 0 ${widthMm * pointsPerMm} ${heightMm * pointsPerMm}`}
-      role="img"
+      role="group"
       aria-label={name}
       className="label-sheet block w-full border border-hair"
       style={
@@ -29,7 +29,17 @@ export function LabelSheet({
       data-paper={grid.paper}
     >
       <Cuts grid={grid} />
-      <Drawn shapes={sheetShapes(grid, labels)} />
+      {labels.map(({ index, item }) => {
+        const { square, words } = labelShapes(grid, index, item)
+        return (
+          <g key={item.id}>
+            <g role="img" aria-label={`Square of jar ${item.jarCode}`}>
+              <Drawn shapes={square} />
+            </g>
+            <Drawn shapes={words} />
+          </g>
+        )
+      })}
     </svg>
   )
 }

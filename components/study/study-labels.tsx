@@ -132,7 +132,7 @@ export function StudyLabels({ code, jars, ownGrid, start }: Props) {
             <LabelSheet
               grid={grid}
               labels={labels}
-              name={`Sheet ${at + 1}: ${labels.map(({ item }) => item.code).join(', ')}`}
+              name={`Sheet ${at + 1} of ${sheets.length}`}
             />
           </li>
         ))}

@@ -1,7 +1,7 @@
 import { createElement } from 'react'
 import { Document, Page, renderToBuffer, Svg } from '@react-pdf/renderer'
 import { labelOf } from '@/components/jar/label-of'
-import { pointsPerMm, sheetShapes } from '@/components/jar/label-shapes'
+import { pointsPerMm, labelShapes } from '@/components/jar/label-shapes'
 import { PdfDrawn } from '@/components/marks/pdf-drawn'
 import { refuse } from '@/lib/http/errors'
 import { mono, registerFonts, text } from '@/lib/report/document/fonts'
@@ -39,7 +39,17 @@ export async function renderLabels(labels: StudyLabels, choice: LabelChoice): Pr
     ...sheets.map((sheet, at) => (
       <Page key={at} size={[width, height]} wrap={false}>
         <Svg width={width} height={height} viewBox={`0 0 ${width} ${height}`}>
-          <PdfDrawn shapes={sheetShapes(grid, sheet)} fontFamily={textFamily} monoFamily={monoFamily} />
+          {sheet.map(({ index, item }) => {
+            const { square, words } = labelShapes(grid, index, item)
+            return (
+              <PdfDrawn
+                key={item.id}
+                shapes={[...square, ...words]}
+                fontFamily={textFamily}
+                monoFamily={monoFamily}
+              />
+            )
+          })}
         </Svg>
       </Page>
     )),

@@ -11,6 +11,14 @@ export function pdfText(bytes: Uint8Array): string[] {
     .map((page) => textOf(page, objects))
 }
 
+/** What draws each page, as its operators stand in the file. */
+export function pdfContents(bytes: Uint8Array): string[] {
+  const objects = objectsOf(Buffer.from(bytes))
+  return [...objects.values()]
+    .filter(({ head }) => /\/Type \/Page\b/.test(head))
+    .map(({ head }) => objects.get(/\/Contents (\d+) 0 R/.exec(head)?.[1] ?? '')?.stream ?? '')
+}
+
 type PdfObject = { head: string; stream: string | null }
 
 function objectsOf(file: Buffer): Map<string, PdfObject> {

@@ -13,7 +13,7 @@ export function chooseJars<
   T extends Pick<JarRow, 'code' | 'state' | 'studyStationId'> & { isMoved: boolean },
 >(jars: T[], { of, jars: typed }: Pick<LabelChoice, 'of' | 'jars'>): { chosen: T[]; fault: string | null } {
   const standing = labelledJars(jars)
-  if (of === 'all') return { chosen: standing, fault: null }
+  if (of === 'all') return found(standing)
   if (of === 'retains') return found(standing.filter((jar) => jar.studyStationId === null))
   if (of === 'moved') return found(standing.filter((jar) => jar.isMoved))
   if (of !== 'jars') return found(standing.filter((jar) => jar.studyStationId === of))

@@ -2,7 +2,7 @@ import type { ProtocolPlan } from '@/lib/protocol/schema'
 import { addDays, spokenDay } from './calendar'
 import { plannedJars } from './jars'
 import { pullsOf } from './pulls'
-import { counted } from './words'
+import { counted, numberWord } from './words'
 import { mondayOf, whyClosed, type LabCalendar } from './working-days'
 
 export const stationKinds = ['temperature', 'freeze-thaw', 'transport'] as const
@@ -105,7 +105,7 @@ export function fullestChanged(before: Workload, after: Workload) {
 
 /** "week of 2 Mar: 48 jars instead of 21" */
 export function changeText({ monday, jars, instead }: { monday: string; jars: number; instead: number }) {
-  return `week of ${spokenDay(monday, false)}: ${counted(jars, 'jar')} instead of ${counted(instead, 'jar').replace(/ jars?$/, '')}`
+  return `week of ${spokenDay(monday, false)}: ${counted(jars, 'jar')} instead of ${instead === 0 ? 'none' : numberWord(instead)}`
 }
 
 export function fullestWeek({ weeks }: Workload): WorkloadWeek | null {
