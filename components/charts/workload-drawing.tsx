@@ -35,7 +35,7 @@ export function WorkloadDrawing({ workload, before, calendar }: Props) {
       <TimeRuler
         scale={layout.scale}
         startOn={monday}
-        points={weeks.flatMap((_, at) => (at % (width < 600 ? 8 : 4) === 0 ? [at] : []))}
+        points={weeks.flatMap((_, at) => (at % (width < 600 ? 12 : 4) === 0 ? [at] : []))}
         todayWeeks={todayWeeks}
         width={width}
         caption=""
