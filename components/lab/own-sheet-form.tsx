@@ -78,7 +78,7 @@ export function OwnSheetForm() {
         ]}
         onPick={(paper) => setDraft({ ...shown, paper: paper as LabelGrid['paper'] })}
       />
-      <div className="grid grid-cols-2 gap-3.5 sm:grid-cols-4">
+      <div className="grid grid-cols-2 items-end gap-3.5 sm:grid-cols-4">
         {fields.map(({ key, label, unit }) => (
           <NumberField
             key={key}
