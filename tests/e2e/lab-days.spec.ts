@@ -55,7 +55,7 @@ async function labDay(page: Page): Promise<string> {
 
 /** Starts a screen on the batch with the most left, and tells on which day its week 2 is planned. */
 async function startStudy(page: Page, holiday: string): Promise<string> {
-  await page.getByRole('checkbox', { name: /^SI82-2 / }).check()
+  await page.getByRole('checkbox', { name: /^SI80-3 / }).check()
   await page
     .getByLabel('Protocol', { exact: true })
     .selectOption({ label: 'P-01, version 1: Prototype screen, cream' })
@@ -70,8 +70,8 @@ async function startStudy(page: Page, holiday: string): Promise<string> {
   expect(day, `${said} lies in the window of a day`).toBeDefined()
   await expect(page.getByText(/^Fullest for the lab: week of \d+ \w+: .+ instead of .+\.$/)).toBeVisible()
   await page.getByLabel('Title').fill('Screen over a holiday')
-  await page.getByLabel('pH of SI82-2').fill('5,6')
-  await page.getByLabel('Viscosity of SI82-2').fill('62')
+  await page.getByLabel('pH of SI80-3').fill('5,6')
+  await page.getByLabel('Viscosity of SI80-3').fill('62')
   await page.getByRole('button', { name: 'Start the study' }).click()
   await expect(page).toHaveURL(/\/studies\/S-\d+\/jars$/)
   return day!
