@@ -11,6 +11,7 @@ import { ingredientList } from '../../ingredient/rules'
 import { pageOf } from '../../list/queries/page'
 import type { Source } from '../../list/queries/source'
 import type { List, ListQuery } from '../../list/schema'
+import { median } from '../../science/mean'
 import { trailSource } from '../../trail/queries'
 import { trailList } from '../../trail/rules/list'
 import { atMost, plain, type Figure } from './figure'
@@ -118,13 +119,13 @@ async function measure<Line, Q extends ListQuery, A>(
   // The first page of the turned list ends where the list itself has its last rows; its token leads there.
   const end = await pageOf(db, source, turned)
   const last = { ...query, place: { side: 'after' as const, token: end.next ?? '' } }
-  const once = await median(() =>
+  const once = await typicalMs(() =>
     sql`select count(*) from ${source.from} where ${source.id} is not null`.execute(db),
   )
-  const first = await median(() => pageOf(db, source, query))
-  const late = await median(() => pageOf(db, source, last))
+  const first = await typicalMs(() => pageOf(db, source, query))
+  const late = await typicalMs(() => pageOf(db, source, last))
   const sought = await sourceOf(db, actor, { ...query, q: '99 999'.replace(' ', '') })
-  const search = await median(() => pageOf(db, sought, query))
+  const search = await typicalMs(() => pageOf(db, sought, query))
   return [
     plain(`${what}: first page, every row read once`, `${first.toFixed(0)} ms, ${once.toFixed(0)} ms`),
     atMost(`${what}: last page beside the first`, late / first, 2, times),
@@ -132,7 +133,7 @@ async function measure<Line, Q extends ListQuery, A>(
   ]
 }
 
-async function median(work: () => Promise<unknown>): Promise<number> {
+async function typicalMs(work: () => Promise<unknown>): Promise<number> {
   const taken: number[] = []
   await work()
   for (let round = 0; round < 7; round++) {
@@ -140,5 +141,5 @@ async function median(work: () => Promise<unknown>): Promise<number> {
     await work()
     taken.push(performance.now() - begun)
   }
-  return taken.toSorted((a, b) => a - b)[3]!
+  return median(taken)
 }
