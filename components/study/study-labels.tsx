@@ -129,11 +129,7 @@ export function StudyLabels({ code, jars, ownGrid, start }: Props) {
       <ol className="label-sheets mt-6 grid gap-6 lg:grid-cols-2 print:mt-0 print:block">
         {sheets.map((labels, at) => (
           <li key={at}>
-            <LabelSheet
-              grid={grid}
-              labels={labels}
-              name={`Sheet ${at + 1} of ${sheets.length}`}
-            />
+            <LabelSheet grid={grid} labels={labels} name={`Sheet ${at + 1} of ${sheets.length}`} />
           </li>
         ))}
       </ol>

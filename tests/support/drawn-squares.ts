@@ -23,12 +23,12 @@ export function drawnSquares(content: string): DrawnSquare[] {
     const left = Math.min(...rects.map((one) => one.x))
     const top = Math.min(...rects.map((one) => one.y))
     const right = Math.max(...rects.map((one) => one.x + one.w))
-    const module = (right - left) / 21
+    const side = (right - left) / 21
     const dark = Array.from({ length: 21 }, () => Array.from({ length: 21 }, () => false))
     for (const { x, y, w } of rects) {
-      const [column, row] = [Math.round((x - left) / module), Math.round((y - top) / module)]
-      for (let run = 0; run < Math.round(w / module); run++) dark[row]![column + run] = true
+      const [column, row] = [Math.round((x - left) / side), Math.round((y - top) / side)]
+      for (let run = 0; run < Math.round(w / side); run++) dark[row]![column + run] = true
     }
-    return [{ left, top, module, dark }]
+    return [{ left, top, module: side, dark }]
   })
 }
