@@ -12,6 +12,7 @@ import { grouped } from '@/lib/number/rules'
 import { fetcher } from '@/lib/http/fetcher'
 import { BatchTray } from './batch-tray'
 import { claimOf, PaperSwitch } from './paper-switch'
+import { ReferenceView } from './reference-view'
 import { RestPart } from './rest-part'
 import { StepPart } from './step-part'
 import { useBatchOutbox } from './use-batch-outbox'
@@ -42,6 +43,7 @@ export function BatchView({ code, part, personId, mayWrite, mayStart }: Props) {
   const shown = part ?? partOf(batch)
   const finding = batchFinding(batch)
   const work: BatchWork = { batch, personId, mayWrite, isBench, outbox, onSaved, claim: () => claimOf(paper) }
+  if (batch.isReference) return <ReferenceView work={work} />
   return (
     <div data-density={isBench ? 'bench' : undefined}>
       <Heading

@@ -19,8 +19,10 @@ export function JarHead({ jar, outbox, onWalk }: { jar: BenchJarPage; outbox: Ou
       <div className="min-w-0 flex-1">
         <h1 className="truncate font-mono text-30 font-700 leading-none sm:text-48">{jar.name}</h1>
         <p className="truncate text-17 sm:mt-1 sm:text-18">
-          {jar.batch.code}, {jar.batch.formulaName}. {capital(jar.label)}
+          {jar.batch.code}, {jar.batch.formulaName}
+          {jar.batch.isReference ? ', a reference' : ''}. {capital(jar.label)}
         </p>
+        {jar.standsAs ? <p className="text-17 font-650 sm:text-18">{capital(jar.standsAs)}</p> : null}
       </div>
       <Tray outbox={outbox} />
       <ThemeButton className="shrink-0" />

@@ -41,7 +41,8 @@ export function JarRow({
         <span className="min-w-0 flex-1 leading-snug">
           <span className="flex flex-wrap justify-between gap-x-3">
             <b className="truncate">
-              {jar.batch.code}, {jar.label}
+              {jar.batch.code}
+              {jar.batch.isReference ? ', a reference' : ''}, {jar.label}
             </b>
             <span
               className={jar.isOverdue ? 'font-650 text-alarm' : jar.isLastDay ? 'font-700' : 'text-soft'}
@@ -49,6 +50,7 @@ export function JarRow({
               {windowText(jar, isKept)}
             </span>
           </span>
+          {jar.standsAs ? <span className="block font-650">{jar.standsAs}</span> : null}
           <span className="block truncate text-soft">
             {jar.openedBy && isOpen
               ? `open: ${jar.openedBy.initials}`

@@ -25,6 +25,8 @@ export type CurveSeries = {
   leaves?: { weeks: number; low: number | null; high: number | null } | null
   /** Set back where another series is the one that is looked at. */
   isQuiet?: boolean
+  /** What it is a series of, where it only stands beside for comparison: drawn soft, judged by nobody. */
+  beside?: string
 }
 
 export type CurveBand = {

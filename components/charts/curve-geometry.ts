@@ -192,8 +192,9 @@ export function doubtGroups(curves: PlottedCurve[]): { weeks: number; low: numbe
 }
 
 export function curveName(series: CurveSeries): string {
-  if (series.kind === 'freeze-thaw') return 'Freeze-thaw'
-  return series.kind === 'batch' ? series.label : `${series.label} °C`
+  if (series.kind === 'batch') return series.label
+  const name = series.kind === 'freeze-thaw' ? 'Freeze-thaw' : `${series.label} °C`
+  return series.beside ? `${name}, ${series.beside}` : name
 }
 
 /** The edge that a series moves towards. */
@@ -226,6 +227,7 @@ export function markerOf(series: CurveSeries, index: number): StationMarker {
 
 /** Leaning and out in alarm; the rest in ink, or in soft beside the one that is looked at. */
 export function colourRole(series: CurveSeries): 'alarm' | 'ink' | 'soft' {
+  if (series.beside) return 'soft'
   if (series.standing === 'out' || series.standing === 'leaning') return 'alarm'
   return series.isQuiet ? 'soft' : 'ink'
 }

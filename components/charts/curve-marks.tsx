@@ -42,7 +42,12 @@ export function CurveMarks({
       {curves.map((curve) => (
         <Leaving key={curve.series.id} curve={curve} input={input} scale={scale} place={place} time={time} />
       ))}
-      <CurveNames curves={curves} place={place} today={today} behind={behind} />
+      <CurveNames
+        curves={curves.filter(({ series }) => !series.beside)}
+        place={place}
+        today={today}
+        behind={behind}
+      />
     </svg>
   )
 }

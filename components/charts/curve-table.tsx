@@ -31,7 +31,7 @@ export function CurveTable({
             {input.series.map((series) => (
               <th key={series.id} scope="col" className="text-right">
                 {curveName(series)}
-                <span className="block text-13 font-430">{series.standing}</span>
+                <span className="block text-13 font-430">{series.beside ? 'beside' : series.standing}</span>
               </th>
             ))}
           </tr>

@@ -97,15 +97,18 @@ function Plot({
         </p>
         {isNarrow && input.band ? <p className="text-14 font-600 text-alarm">{input.band.text}</p> : null}
         <ul className={isNarrow ? 'mt-1 flex flex-wrap gap-x-5' : 'mt-2'}>
-          {input.series.map((series, index) => (
-            <Key
-              key={series.id}
-              series={series}
-              index={index}
-              nameAs={(name) => (nameAs ? nameAs(input, series, name) : name)}
-            />
-          ))}
+          {input.series.map((series, index) =>
+            series.beside ? null : (
+              <Key
+                key={series.id}
+                series={series}
+                index={index}
+                nameAs={(name) => (nameAs ? nameAs(input, series, name) : name)}
+              />
+            ),
+          )}
         </ul>
+        <BesideKey names={[...new Set(input.series.flatMap(({ beside }) => beside ?? []))]} />
         <button
           type="button"
           className="min-h-9 text-left text-13 text-soft underline underline-offset-2"
@@ -133,6 +136,19 @@ function Plot({
         </div>
       ) : null}
     </section>
+  )
+}
+
+/** Soft lines of the same weights: what stands beside for comparison. */
+function BesideKey({ names }: { names: string[] }) {
+  if (names.length === 0) return null
+  return (
+    <p className="flex items-center gap-2.5 text-14 text-soft">
+      <svg width={34} height={16} viewBox="-17 -8 34 16" aria-hidden className="block shrink-0">
+        <path d="M-17 0H17" stroke="var(--soft)" strokeWidth={1.75} />
+      </svg>
+      {names.join(', ')}
+    </p>
   )
 }
 

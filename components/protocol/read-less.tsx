@@ -2,6 +2,7 @@
 
 import { Checkbox } from '@/components/ui/checkbox'
 import { Field } from '@/components/ui/field'
+import { RadioGroup } from '@/components/ui/radio-group'
 import { matrixed, priceOf } from '@/lib/protocol/rules/matrixing'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
 import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
@@ -40,6 +41,21 @@ export function ReadLess({ plan, onChange, fields }: Props) {
           ))}
         </div>
       </fieldset>
+      <RadioGroup
+        label="Batches measured at a middle time point"
+        value={plan.batchMatrixing ?? 'all'}
+        onPick={(share) =>
+          onChange({
+            ...plan,
+            batchMatrixing: share === 'all' ? undefined : (share as 'half' | 'two thirds'),
+          })
+        }
+        options={[
+          { value: 'all', label: 'all' },
+          { value: 'two thirds', label: 'two thirds of them, by turns' },
+          { value: 'half', label: 'half of them, by turns' },
+        ]}
+      />
       <Checkbox
         label="Bracketed: only the extremes of one factor are tested"
         checked={bracketing !== undefined}

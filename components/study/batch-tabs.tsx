@@ -9,7 +9,7 @@ export function BatchTabs({
 }: {
   code: string
   path: string
-  batches: { code: string }[]
+  batches: { code: string; isReference: boolean }[]
   shown: string
 }) {
   return (
@@ -18,7 +18,7 @@ export function BatchTabs({
         label="Batches of this study"
         tabs={batches.map((batch) => ({
           href: `/studies/${encodeURIComponent(code)}${path}?batch=${encodeURIComponent(batch.code)}`,
-          label: batch.code,
+          label: batch.isReference ? `${batch.code}, a reference` : batch.code,
           isHere: batch.code === shown,
         }))}
       />

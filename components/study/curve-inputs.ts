@@ -25,14 +25,62 @@ export function curveInputs(page: CurvesPage, batchId: string): CurveInput[] {
         ),
         decimals: attribute === 'ph' ? 2 : attribute === 'viscosity' ? 0 : 1,
         band: bandOf(first.finding, attribute, scale),
-        series: page.stations.toReversed().flatMap((station) => {
-          const one = series.find((candidate) => candidate.studyStationId === station.id)
-          return one ? [seriesOf(one, station, attribute, scale)] : []
-        }),
+        series: [
+          ...besideSeries(page, batchId, attribute, scale),
+          ...page.stations.toReversed().flatMap((station) => {
+            const one = series.find((candidate) => candidate.studyStationId === station.id)
+            return one ? [seriesOf(one, station, attribute, scale)] : []
+          }),
+        ],
         notes: notesOf(series),
       },
     ]
   })
+}
+
+/** References of this study and the chosen batch of another one: their counted readings alone, on this study's time. */
+function besideSeries(
+  page: CurvesPage,
+  batchId: string,
+  attribute: AttributeKey,
+  scale: number,
+): CurveSeries[] {
+  const references = page.batches
+    .filter((batch) => batch.isReference && batch.id !== batchId)
+    .flatMap((batch) =>
+      page.series
+        .filter((one) => one.batchId === batch.id && one.attribute === attribute)
+        .flatMap((one) => {
+          const station = page.stations.find(({ id }) => id === one.studyStationId)
+          return station ? [{ ...station, beside: batch.code, points: one.finding.points }] : []
+        }),
+    )
+  const earlier = (page.beside?.series ?? [])
+    .filter((one) => one.attribute === attribute)
+    .filter((one) =>
+      page.stations.some(
+        (station) =>
+          station.isFreezeThaw === one.isFreezeThaw &&
+          station.temperatureC === one.temperatureC &&
+          station.variant === one.variant,
+      ),
+    )
+    .map((one) => ({ ...one, beside: page.beside!.name }))
+  return [...references, ...earlier].map(({ id, isFreezeThaw, temperatureC, beside, points }) => ({
+    id: `${beside} ${id}`,
+    label: String(temperatureC ?? 25).replace('-', '−'),
+    kind: isFreezeThaw ? ('freeze-thaw' as const) : ('temperature' as const),
+    temperatureC: temperatureC ?? 25,
+    standing: 'untold' as const,
+    beside,
+    points: points
+      .filter((point) => point.counted && point.time <= page.study.endWeeks)
+      .map((point) => ({
+        weeks: point.time,
+        value: point.mean / scale,
+        text: shownWithUnit(attribute, point.mean),
+      })),
+  }))
 }
 
 /** The method in lines that fit beside the plot. */

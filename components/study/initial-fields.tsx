@@ -11,7 +11,7 @@ import { attributeOf } from '@/lib/reading/schema/attributes'
 import { mean } from '@/lib/science/mean'
 import { viscosity } from '@/lib/science/viscosity'
 import { shownWithUnit } from '@/lib/study/rules/words'
-import { initialAttributes, typedKey, type Draft, type Offer } from './start-state'
+import { initialAttributes, takenBatches, typedKey, type Draft, type Offer } from './start-state'
 
 type Props = {
   offer: Offer
@@ -25,7 +25,7 @@ type Props = {
 export function InitialFields({ offer, draft, plan, set, fields }: Props) {
   const attributes = initialAttributes(plan)
   if (attributes.length === 0) return null
-  const batches = offer.batches.filter((batch) => draft.batchIds.includes(batch.id))
+  const batches = offer.batches.filter((batch) => takenBatches(draft).includes(batch.id))
   return (
     <Section
       title="Initial readings"
@@ -153,7 +153,7 @@ function errorOf(
   batchId: string,
   attribute: string,
 ): string | undefined {
-  const sent = draft.batchIds.flatMap((id) =>
+  const sent = takenBatches(draft).flatMap((id) =>
     initialAttributes(plan)
       .filter((one) => (draft.typed[typedKey(id, one.attribute)] ?? []).some((text) => text.trim() !== ''))
       .map((one) => typedKey(id, one.attribute)),

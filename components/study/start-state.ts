@@ -1,20 +1,16 @@
 import { readDecimal } from '@/lib/number/rules'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
-import { jarsAtStation, jarsOfPlan, stationName } from '@/lib/protocol/rules/plan'
+import { jarsOfPlan, stationName } from '@/lib/protocol/rules/plan'
 import type { ProtocolRow } from '@/lib/protocol/queries'
 import { startsAtZero } from '@/lib/reading/schema/attributes'
 import { jarsFromGrams } from '@/lib/science/jar-grams'
 import type { ReleasedBatch } from '@/lib/study/queries/batches'
 import type { LabWorkload } from '@/lib/study/queries/workload'
 import { occupancy, type Leaving } from '@/lib/station/rules/occupancy'
-import {
-  adjustedPlan,
-  placeAdjustments,
-  startedChoices,
-  startedPositions,
-  waysToFit,
-} from '@/lib/study/rules/plan'
+import { placesAt, plansOfBatches, type TakenBatches } from '@/lib/study/rules/jars'
+import { adjustedPlan, startedChoices, startedPositions } from '@/lib/study/rules/plan'
 import { placesNeeded, plannedLeavings, pullsInDowntime, waysToStand } from '@/lib/study/rules/room'
+import { savingsOf, type Saving } from '@/lib/study/rules/savings'
 import { chosenStations, fittingStations, freeIn } from '@/lib/study/rules/stations'
 import type { StationRow } from '@/lib/station/queries/stations'
 import type { StartStudy, StudyAdjustments } from '@/lib/study/schema'
@@ -35,6 +31,8 @@ export type Offer = {
 export type Draft = {
   title: string
   batchIds: string[]
+  /** What stands beside them for comparison. */
+  referenceIds: string[]
   protocolVersionId: string
   /** By the station's position in the protocol. */
   stationIds: Record<number, string>
@@ -51,6 +49,7 @@ export type Draft = {
 export const emptyDraft: Draft = {
   title: '',
   batchIds: [],
+  referenceIds: [],
   protocolVersionId: '',
   stationIds: {},
   adjustments: {},
@@ -67,37 +66,49 @@ export function planOf(offer: Offer, draft: Draft): ProtocolPlan | null {
   return protocol ? adjustedPlan(protocol.plan, draft.adjustments) : null
 }
 
-/** Jars and grams of each chosen batch, and what would fit where one is short. */
+/** The batches of the study and what stands beside it: all that are filled and read. */
+export function takenBatches({ batchIds, referenceIds }: Draft): string[] {
+  return [...batchIds, ...referenceIds]
+}
+
+/** Jars and grams of each chosen batch. */
 export function needsOf(offer: Offer, draft: Draft) {
-  const protocol = protocolOf(offer, draft)
-  if (!protocol) return []
-  const plan = adjustedPlan(protocol.plan, draft.adjustments)
-  const places = placeAdjustments(draft.adjustments)
-  const asPlanned = adjustedPlan(protocol.plan, places)
-  return draft.batchIds.flatMap((id) => {
-    const batch = offer.batches.find((one) => one.id === id)
+  const all = planOf(offer, draft)
+  if (!all) return []
+  return plansOfBatches(all, draft.batchIds, draft.referenceIds).flatMap(({ batchId, plan }) => {
+    const batch = offer.batches.find((one) => one.id === batchId)
     if (!batch) return []
-    const leftG = Math.max(0.001, (batch.yieldG ?? 0) - batch.takenG)
-    const need = jarsOfPlan(plan, leftG)
-    const isShortAsPlanned = !jarsOfPlan(asPlanned, leftG).fits
+    const leftG = leftOf(batch)
     return [
       {
         batch,
+        isReference: draft.referenceIds.includes(batchId),
         leftG,
         plan,
-        ...need,
+        ...jarsOfPlan(plan, leftG),
         enoughFor: jarsFromGrams(leftG, plan.fillG, plan.lossPercent),
-        options: isShortAsPlanned
-          ? waysToFit(asPlanned, leftG).map((way) => ({
-              ...way,
-              adjustments: { ...places, ...way.adjustments },
-            }))
-          : [],
       },
     ]
   })
 }
 export type Need = ReturnType<typeof needsOf>[number]
+
+function leftOf(batch: ReleasedBatch): number {
+  return Math.max(0.001, (batch.yieldG ?? 0) - batch.takenG)
+}
+
+/** Where this study could take less, what would make the shortest batch do among it. */
+export function savingsFor(offer: Offer, draft: Draft): Saving[] {
+  const protocol = protocolOf(offer, draft)
+  if (!protocol || draft.batchIds.length === 0) return []
+  const { leaveOutStations } = draft.adjustments
+  const started = adjustedPlan(protocol.plan, leaveOutStations ? { leaveOutStations } : {})
+  const short = plansOfBatches(started, draft.batchIds, draft.referenceIds).flatMap(({ batchId, plan }) => {
+    const batch = offer.batches.find((one) => one.id === batchId)
+    return batch && !jarsOfPlan(plan, leftOf(batch)).fits ? [leftOf(batch)] : []
+  })
+  return savingsOf(protocol.plan, draft.adjustments, draft, short.length > 0 ? Math.min(...short) : null)
+}
 
 function protocolOf(offer: Offer, draft: Draft): ProtocolRow | undefined {
   return offer.protocols.find((one) => one.versionId === draft.protocolVersionId)
@@ -123,7 +134,11 @@ export function placesOf(offer: Offer, draft: Draft) {
   const plan = adjustedPlan(protocol.plan, draft.adjustments)
   const started = startedPositions(protocol.plan, draft.adjustments)
   const chosen = stationsOf(offer, draft, protocol, plan)
-  const batchCount = Math.max(1, draft.batchIds.length)
+  // Before a batch is chosen, the places of one are told.
+  const taken: TakenBatches = {
+    batchIds: draft.batchIds.length > 0 ? draft.batchIds : [''],
+    referenceIds: draft.referenceIds,
+  }
   const { leavings } = offer
   const { today, calendar } = offer.lab
   return protocol.plan.stations.map((asked, protocolPosition) => {
@@ -132,8 +147,8 @@ export function placesOf(offer: Offer, draft: Draft) {
     const station = position === -1 ? null : (chosen[position] ?? null)
     const own = leavings.filter((one) => one.stationId === station?.id)
     const needed = station
-      ? placesNeeded(plan, chosen, station.id, batchCount)
-      : jarsAtStation(plan, planned) * batchCount
+      ? placesNeeded(plan, chosen, station.id, taken)
+      : placesAt(plansOfBatches(protocol.plan, taken.batchIds, taken.referenceIds), protocolPosition)
     const isFull = station !== null && freeIn(station) < needed
     return {
       protocolPosition,
@@ -151,7 +166,7 @@ export function placesOf(offer: Offer, draft: Draft) {
             { position, protocolPosition },
             chosen,
             offer.stations,
-            batchCount,
+            taken,
             leavings,
             today,
           )
@@ -159,7 +174,7 @@ export function placesOf(offer: Offer, draft: Draft) {
       before: occupancy(today, own),
       after: occupancy(
         today,
-        station ? [...own, ...plannedLeavings(plan, chosen, station.id, batchCount, today)] : own,
+        station ? [...own, ...plannedLeavings(plan, chosen, station.id, taken, today)] : own,
       ),
       downtimes: station
         ? pullsInDowntime(
@@ -194,6 +209,7 @@ export function bodyOf(id: string, offer: Offer, draft: Draft): StartStudy {
     title: draft.title.trim() || protocol?.name || '',
     protocolVersionId: draft.protocolVersionId,
     batchIds: draft.batchIds,
+    referenceIds: draft.referenceIds,
     stationChoices: placesOf(offer, draft).flatMap(({ station, protocolPosition }) =>
       station ? [{ position: protocolPosition, stationId: station.id }] : [],
     ),
@@ -202,7 +218,7 @@ export function bodyOf(id: string, offer: Offer, draft: Draft): StartStudy {
     clientId: draft.clientId || null,
     isShared: draft.clientId !== '' && draft.isShared,
     initialReadings: plan
-      ? draft.batchIds.flatMap((batchId) =>
+      ? takenBatches(draft).flatMap((batchId) =>
           initialAttributes(plan).flatMap(({ attribute }) => {
             const typed = (draft.typed[typedKey(batchId, attribute)] ?? []).filter(
               (text) => text.trim() !== '',
@@ -228,6 +244,9 @@ export function whyNot(offer: Offer, draft: Draft): string | undefined {
   const plan = planOf(offer, draft)
   if (draft.batchIds.length === 0) return 'Choose a batch.'
   if (!plan) return 'Choose a protocol.'
+  if (plan.batchMatrixing && draft.batchIds.length < 2) {
+    return 'Its batches are measured by turns: choose at least two.'
+  }
   const short = needsOf(offer, draft).find((need) => !need.fits)
   if (short) return `${Math.ceil(short.shortG)} g short.`
   const places = placesOf(offer, draft)
@@ -237,7 +256,7 @@ export function whyNot(offer: Offer, draft: Draft): string | undefined {
   if (places.every((place) => !place.isStarted)) return 'No station starts.'
   if (places.some((place) => !place.isStarted) && draft.whyInPart.trim() === '')
     return 'Say why it starts in part.'
-  const missing = draft.batchIds.some((batchId) =>
+  const missing = takenBatches(draft).some((batchId) =>
     initialAttributes(plan).some(
       ({ attribute }) =>
         !(draft.typed[typedKey(batchId, attribute)] ?? []).some((text) => readDecimal(text) !== null),

@@ -15,14 +15,15 @@ import { toast } from '@/components/ui/toast'
 import { TakeReadyMade } from '@/components/protocol/take-ready-made'
 import { newId } from '@/lib/db/id'
 import { ClientError, send } from '@/lib/http/fetcher'
-import { placeAdjustments } from '@/lib/study/rules/plan'
 import { freeIn } from '@/lib/study/rules/stations'
 import { counted } from '@/lib/study/rules/words'
 import { studyKeys } from '@/lib/study/schema'
 import { grouped } from '@/lib/number/rules'
+import { BatchChoice } from './batch-choice'
 import { InitialFields } from './initial-fields'
 import { NeedPart } from './need-part'
 import { StartCalendar } from './start-calendar'
+import { Savings } from './savings'
 import { StationChoices } from './station-choices'
 import {
   bodyOf,
@@ -30,6 +31,7 @@ import {
   needsOf,
   placesOf,
   planOf,
+  savingsFor,
   whyNot,
   type Draft,
   type Need,
@@ -160,8 +162,13 @@ export function StartStudyForm({ offer, batchCode, protocolCode }: Props) {
         </div>
         <div className="grid content-start gap-8">
           {needs.map((need) => (
-            <NeedPart key={need.batch.id} need={need} draft={draft} set={set} />
+            <NeedPart key={need.batch.id} need={need} />
           ))}
+          <Savings
+            savings={savingsFor(offer, draft)}
+            adjustments={draft.adjustments}
+            onChange={(adjustments) => set({ adjustments })}
+          />
           {plan && draft.batchIds.length > 0 ? (
             <InitialFields offer={offer} draft={draft} plan={plan} set={set} fields={fields} />
           ) : null}
@@ -210,47 +217,5 @@ function Headline({
     <>
       <b>{jars} jars</b> will stand
     </>
-  )
-}
-
-function BatchChoice({
-  offer,
-  draft,
-  set,
-}: {
-  offer: Offer
-  draft: Draft
-  set: (change: Partial<Draft>) => void
-}) {
-  return (
-    <fieldset>
-      <legend className="font-600">Batches</legend>
-      <div className="max-h-[230px] divide-y divide-hair overflow-y-auto border-b border-hair">
-        {offer.batches.map((batch) => (
-          <div key={batch.id} className="flex items-center justify-between gap-4">
-            <Checkbox
-              label={
-                <>
-                  <b className="font-650">{batch.code}</b> {batch.formulaName}
-                </>
-              }
-              checked={draft.batchIds.includes(batch.id)}
-              onChange={(event) =>
-                set({
-                  adjustments: placeAdjustments(draft.adjustments),
-                  clientId: draft.clientId || batch.clientId || '',
-                  batchIds: event.target.checked
-                    ? [...draft.batchIds, batch.id]
-                    : draft.batchIds.filter((id) => id !== batch.id),
-                })
-              }
-            />
-            <span className="text-14 whitespace-nowrap text-soft">
-              {grouped(Math.floor((batch.yieldG ?? 0) - batch.takenG), 0)} g left
-            </span>
-          </div>
-        ))}
-      </div>
-    </fieldset>
   )
 }

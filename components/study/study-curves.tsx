@@ -11,16 +11,24 @@ import type { CurvesPage } from '@/lib/study/queries/curves'
 import { studyKeys } from '@/lib/study/schema'
 import { curveName } from '@/components/charts/curve-geometry'
 import { BatchTabs } from './batch-tabs'
+import { BesideChoice } from './beside-choice'
 import { curveInputs } from './curve-inputs'
 import { PhotoStrip } from './photo-strip'
 import { SeriesDetails } from './series-details'
 import { StudyHeading, type StudyRights } from './study-heading'
 
-type Props = { code: string; rights: StudyRights; batch: string | null; station: string | null }
+type Props = {
+  code: string
+  rights: StudyRights
+  batch: string | null
+  station: string | null
+  /** A batch of another study whose readings are drawn along; empty where none is. */
+  beside: string
+}
 
 /** Every measured attribute over the study's own time, under one ruler with the photos of one station. */
-export function StudyCurves({ code, rights, batch, station }: Props) {
-  const { data: page } = useSWR<CurvesPage>(studyKeys.curves(code), fetcher)
+export function StudyCurves({ code, rights, batch, station, beside }: Props) {
+  const { data: page } = useSWR<CurvesPage>(studyKeys.curves(code, beside), fetcher)
   if (!page) return null
   const { study, batches } = page
   const shown = batches.find((one) => one.code === batch) ?? batches[0]
@@ -39,6 +47,7 @@ export function StudyCurves({ code, rights, batch, station }: Props) {
       {batches.length > 1 ? (
         <BatchTabs code={code} path="/curves" batches={batches} shown={shown?.code ?? ''} />
       ) : null}
+      <BesideChoice batch={batch} beside={beside} page={page} />
       <div className="mt-5">
         {plots.length === 0 ? (
           <Empty
@@ -55,7 +64,7 @@ export function StudyCurves({ code, rights, batch, station }: Props) {
             todayWeeks={page.todayWeeks}
             nameAs={(input, series, name) => {
               const attribute = attributeKeyOf(input)
-              return shown && attribute ? (
+              return shown && attribute && !series.beside ? (
                 <SeriesDetails
                   code={code}
                   series={{ batchId: shown.id, studyStationId: series.id, attribute }}

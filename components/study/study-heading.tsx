@@ -8,6 +8,7 @@ import type { StudyBatchRow } from '@/lib/study/queries/head'
 import type { ShownStudy } from '@/lib/study/queries/sheet'
 import { spokenDay } from '@/lib/study/rules/calendar'
 import type { Phrase } from '@/lib/study/rules/finding'
+import { listed } from '@/lib/study/rules/words'
 import { FollowButton } from './follow-button'
 import { Phrases } from './phrases'
 
@@ -81,23 +82,41 @@ function CaseLink({ study }: { study: ShownStudy }) {
 }
 
 function Crumb({ study, batches, rights }: Pick<Props, 'study' | 'batches' | 'rights'>) {
-  const [first] = batches
+  const own = batches.filter((batch) => !batch.isReference)
+  const references = batches.filter((batch) => batch.isReference)
+  const [first] = own
   return (
     <>
-      {study.code}, {batches.length === 1 ? 'batch ' : 'batches '}
-      {batches.map((batch, index) => (
-        <span key={batch.id}>
-          {index > 0 ? (index === batches.length - 1 ? ' and ' : ', ') : ''}
-          {rights.mayReadBatches ? <Link href={`/batches/${batch.code}`}>{batch.code}</Link> : batch.code}
-        </span>
-      ))}
+      {study.code}, {own.length === 1 ? 'batch ' : 'batches '}
+      <BatchNames batches={own} rights={rights} />
       {first ? `: ${first.formulaName}, ${inside(first)}. ` : '. '}
+      {references.length > 0 ? (
+        <>
+          Beside {own.length === 1 ? 'it' : 'them'} as a reference{' '}
+          <BatchNames batches={references} rights={rights} />:{' '}
+          {listed(
+            references.map(
+              ({ formulaName, productLot }) => formulaName + (productLot && `, lot ${productLot}`),
+            ),
+          )}
+          .{' '}
+        </>
+      ) : null}
       {study.title}
       {/\d (weeks|months)/.test(study.title) ? '' : `, ${span(study.endWeeks)}`}, begun{' '}
       {spokenDay(study.startedOn)}
       {study.endedOn ? `, ended ${spokenDay(study.endedOn)}` : ''}
     </>
   )
+}
+
+function BatchNames({ batches, rights }: Pick<Props, 'batches' | 'rights'>) {
+  return batches.map((batch, index) => (
+    <span key={batch.id}>
+      {index > 0 ? (index === batches.length - 1 ? ' and ' : ', ') : ''}
+      {rights.mayReadBatches ? <Link href={`/batches/${batch.code}`}>{batch.code}</Link> : batch.code}
+    </span>
+  ))
 }
 
 function inside(batch: StudyBatchRow): string {

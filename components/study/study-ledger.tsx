@@ -126,7 +126,8 @@ const cells: Parameters<typeof ListLedger<LedgerRow>>[0]['cells'] = {
   batch: {
     cell: (row) => (
       <span className="block max-w-[118px] truncate sm:max-w-[230px]" title={row.title}>
-        <b className="font-650">{batchNames(row.batches)}</b> {row.formulaName}
+        <b className="font-650">{batchNames(row.batches)}</b>
+        {row.references.length > 0 ? ` beside ${batchNames(row.references)},` : ''} {row.formulaName}
       </span>
     ),
   },

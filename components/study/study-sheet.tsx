@@ -72,7 +72,7 @@ export function StudySheet({
       <div className="mt-5">
         {shown ? (
           <Sheet
-            title={`Sheet of ${code}, batch ${shown.code}`}
+            title={`Sheet of ${code}, ${shown.isReference ? 'reference' : 'batch'} ${shown.code}`}
             {...sheetProps(sheet, shown.id)}
             selected={selected}
             onSelect={setPicked}

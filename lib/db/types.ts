@@ -29,6 +29,7 @@ export interface Batch {
   id: string
   madeAt: string | null
   note: Generated<string>
+  productLot: Generated<string>
   protocolVersionId: string | null
   sizeG: Numeric
   state: Generated<string>
@@ -234,6 +235,7 @@ export interface Formula {
   emulsionType: string
   familyOfVersionId: string | null
   id: string
+  isReference: Generated<boolean>
   levels: Generated<unknown>
   name: string
   version: Generated<number>
@@ -681,6 +683,7 @@ export interface StudyAmendment {
 export interface StudyBatch {
   batchId: string
   id: string
+  isReference: Generated<boolean>
   position: number
   studyId: string
 }

@@ -34,7 +34,7 @@ const sources: Source[] = [
   {
     kind: 'formula',
     permission: 'formula.read',
-    rows: () => sql`select code, name, code as of from formula`,
+    rows: () => sql`select code, name, code as of from formula where not is_reference`,
     href: ({ code }) => `/formulas/${part(code)}`,
   },
   {

@@ -114,6 +114,8 @@ export const protocolPlan = z.object({
     .optional(),
   /** Attributes read at every second of the middle time points [std: ICH Q1D]. */
   matrixing: z.object({ attributes: z.array(attributeKey).min(1).max(20) }).optional(),
+  /** How many of the batches are measured at a middle time point, by turns [std: ICH Q1D]; all where nothing is said. */
+  batchMatrixing: z.enum(['half', 'two thirds']).optional(),
   /** Only the extremes of one factor are filled; what lies between is inferred [std: ICH Q1D]. */
   bracketing: z
     .object({

@@ -16,6 +16,9 @@ export const studyAdjustments = z
       .array(z.object({ position: z.number().int().min(0), spares: z.number().int().min(0).max(10) }))
       .max(12)
       .optional(),
+    /** Stations by their position at which every second of the middle pulls opens no jar, or one jar alone. */
+    everySecondTime: z.array(z.number().int().min(0)).max(12).optional(),
+    oneJarAPull: z.array(z.number().int().min(0)).max(12).optional(),
   })
   .default({})
 export type StudyAdjustments = z.output<typeof studyAdjustments>
@@ -44,6 +47,8 @@ export const startedStudy = z.object({
   title: z.string().trim().min(1, 'Give the study a title.').max(160),
   protocolVersionId: z.uuid(),
   batchIds: z.array(z.uuid()).min(1, 'Choose at least one batch.').max(12),
+  /** Batches that stand beside them for comparison: read like the others, counted nowhere. */
+  referenceIds: z.array(z.uuid()).max(4, 'At most four references stand beside a study.').default([]),
   /** The lab's station for each of the protocol's stations, by position; what is left out is chosen by its fit. */
   stationChoices: z.array(z.object({ position: z.number().int().min(0), stationId: z.uuid() })).default([]),
   adjustments: studyAdjustments,
@@ -103,6 +108,9 @@ export const studyAddress = z.object({ code: z.string().max(40) })
 
 export const studyStandings = ['out', 'leaning', 'steady', 'untold'] as const
 
+/** A batch of an earlier study, drawn beside this one's curves: "S-003 SI82-1". */
+export const curvesQuery = z.object({ beside: z.string().trim().max(80).catch('').default('') })
+
 /** One attribute of one batch at one station. */
 export const seriesAddress = z.object({
   batchId: z.uuid(),
@@ -118,7 +126,8 @@ export const studyKeys = {
   start: '/api/studies',
   one: (code: string) => address(code),
   sheet: (code: string) => `${address(code)}/sheet`,
-  curves: (code: string) => `${address(code)}/curves`,
+  curves: (code: string, beside: string | null = null) =>
+    `${address(code)}/curves${beside ? `?${new URLSearchParams({ beside })}` : ''}`,
   /** What one series is computed from. */
   series: (code: string, { batchId, studyStationId, attribute }: SeriesAddress) =>
     `${address(code)}/series?${new URLSearchParams({ batchId, studyStationId, attribute })}`,

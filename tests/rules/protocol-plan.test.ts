@@ -3,14 +3,14 @@ import { plannedFor } from '@/lib/bench/rules'
 import { planChanges } from '@/lib/protocol/rules/changes'
 import { missingInPlan, planFaults } from '@/lib/protocol/rules/faults'
 import { matrixed, priceOf } from '@/lib/protocol/rules/matrixing'
-import { askedAt, jarsAtStation, jarsOfPlan, stationName } from '@/lib/protocol/rules/plan'
+import { askedAt, askedWeeks, jarsAtStation, jarsOfPlan, stationName } from '@/lib/protocol/rules/plan'
 import { readyMadePlan } from '@/lib/protocol/rules/ready-made'
 import { bandText, cycleText, toleranceText } from '@/lib/protocol/rules/words'
 import { protocolPlan, type PlannedStation, type ProtocolPlan } from '@/lib/protocol/schema'
 import { attributeOf, startsAtZero } from '@/lib/reading/schema/attributes'
 import { cycleDoubts } from '@/lib/reading/rules/entry-doubts'
 import { toleranceBand } from '@/lib/science/band'
-import { plannedJars } from '@/lib/study/rules/jars'
+import { plannedJars, plansOfBatches } from '@/lib/study/rules/jars'
 import { adjustedPlan } from '@/lib/study/rules/plan'
 import { refuseStations } from '@/lib/study/rules/refusals'
 import { isWorded } from '@/lib/study/rules/words'
@@ -18,10 +18,15 @@ import { chosenStations } from '@/lib/study/rules/stations'
 
 const plan = readyMadePlan('screen', 'cream')
 const refuse = (asked: ProtocolPlan, chosen: Parameters<typeof refuseStations>[1]) =>
-  refuseStations(asked, chosen, 1, {
-    ...{ protocolPlan: asked, adjustments: {}, stations: [], leavings: [] },
-    today: '2026-12-01',
-  })
+  refuseStations(
+    asked,
+    chosen,
+    { batchIds: ['b'], referenceIds: [] },
+    {
+      ...{ protocolPlan: asked, adjustments: {}, stations: [], leavings: [] },
+      today: '2026-12-01',
+    },
+  )
 const [cold, room, warm] = plan.stations as [PlannedStation, PlannedStation, PlannedStation]
 const place = (id: string, temperatureC: number | null, kind = 'temperature', places = 100) => ({
   id,
@@ -225,6 +230,61 @@ describe('matrixing', () => {
     expect(priceOf({ ...plan, bracketing })[0]).toBe(
       'Only 15 mL and 100 mL are tested. That 30 mL is at least as stable as the worse of them is inferred, never shown.',
     )
+  })
+})
+
+describe('matrixing over batches', () => {
+  const long = readyMadePlan('long-term', 'cream')
+  const third = { ...long, batchMatrixing: 'two thirds' as const }
+  const measuredAt = (of: ProtocolPlan, batches: string[], references: string[] = []) =>
+    plansOfBatches(of, batches, references).map(({ plan: own }) =>
+      askedWeeks(own, own.stations[1]!, 'measuring'),
+    )
+
+  it('measures two of three batches at a middle time by turns; the first, month 12 and the last take all', () => {
+    // 13, 26, 39, 52, 78, 104 and 156 weeks at 25 °C.
+    const weeks = measuredAt(third, ['a', 'b', 'c'])
+    const count = (week: number) => weeks.filter((own) => own.includes(week)).length
+    expect([13, 52, 156].map(count)).toEqual([3, 3, 3])
+    expect([26, 39, 78, 104].map(count)).toEqual([2, 2, 2, 2])
+    // Four middle times for three batches: one rests twice, the others once.
+    expect(weeks.map((own) => own.length).toSorted()).toEqual([5, 6, 6])
+  })
+
+  it('halves are balanced within one, and every batch rests on the same days at every station', () => {
+    const half = { ...plan, batchMatrixing: 'half' as const }
+    const weeks = measuredAt(half, ['a', 'b'])
+    expect(weeks).toEqual([
+      [1, 3, 5, 8, 12],
+      [1, 2, 4, 6, 10, 12],
+    ])
+    const [first] = plansOfBatches(half, ['a', 'b'])
+    const asked = first!.plan.stations.slice(0, 4).map((one) => askedWeeks(first!.plan, one, 'measuring'))
+    expect(new Set(asked.map(String)).size).toBe(1)
+    // The sealed jars are looked at every time, and cycles take all.
+    expect(askedWeeks(first!.plan, first!.plan.stations[0]!, 'watch')).toHaveLength(9)
+    expect(askedWeeks(first!.plan, first!.plan.stations[4]!, 'measuring')).toHaveLength(5)
+  })
+
+  it('saves the jars that are not opened, and a reference is measured every time', () => {
+    const half = { ...plan, batchMatrixing: 'half' as const }
+    const jars = plannedJars(half, ['a', 'b'], ['r'])
+    const of = (id: string) => jars.filter((jar) => jar.batchId === id).length
+    // Of nine pulls at four stations: five and six are measured.
+    expect([of('a'), of('b'), of('r')]).toEqual([54 - 4 * 4, 54 - 4 * 3, 54])
+    expect(plansOfBatches(half, ['a'])[0]!.plan).toEqual(half)
+  })
+
+  it('names its price, among it that batches cannot be compared at a middle time', () => {
+    const price = priceOf(third).join(' ')
+    expect(price).toMatch(
+      /two thirds of the batches are measured, by turns: there batches cannot be compared/,
+    )
+    expect(price).toMatch(/Whether batches may be pooled is tested on fewer points/)
+    expect(price).toMatch(/fewer than five times/)
+    expect(planChanges(long, third)).toEqual([
+      'Batches measured at a middle time point: nothing, now two thirds.',
+    ])
   })
 })
 

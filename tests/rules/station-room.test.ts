@@ -55,11 +55,15 @@ describe('a study that does not fit', () => {
   })
   const at = plan.stations.findIndex((station) => station.temperatureC === 45)
   const spares = plan.stations[at]!.spares
+  const of = (batches: number) => ({
+    batchIds: Array.from({ length: batches }, (_, index) => String(index)),
+    referenceIds: [],
+  })
   const ways = (free: number, batches: number, others = [] as ReturnType<typeof offer>[]) => {
     const oven = offer('oven', 45, free)
     const chosen = plan.stations.map((_, position) => (position === at ? oven : null))
     const at45 = { position: at, protocolPosition: at }
-    return waysToStand(plan, {}, at45, chosen, [oven, ...others], batches, [], today)
+    return waysToStand(plan, {}, at45, chosen, [oven, ...others], of(batches), [], today)
   }
 
   it('is offered another station with room, fewer spares, fewer batches, and to start without', () => {
@@ -86,7 +90,7 @@ describe('a study that does not fit', () => {
         adjustedPlan(plan, adjustments).stations.map((one) =>
           one.temperatureC === 45 ? offer('oven', 45, 10) : null,
         ),
-        ...(['oven', 1, today] as const),
+        ...(['oven', of(1), today] as const),
       ).reduce((sum, one) => sum + one.jars, 0)
     expect(jars({})).toBe(11)
     expect(jars(spared!.adjustments!)).toBe(10)

@@ -92,6 +92,7 @@ async function lockFormula(trx: Trx, formulaVersionId: string) {
       ),
     )
     .where('formulaVersion.id', '=', formulaVersionId)
+    .where('formula.isReference', '=', false)
     .forUpdate()
     .executeTakeFirst()
   if (!row) throw refuse.notFound('That version of the formula is not there. Load the page again.')

@@ -29,6 +29,8 @@ export async function getBatch(db: Db, actor: Actor, code: string) {
       'batch.yieldG',
       'batch.fillG',
       'batch.closure',
+      'batch.productLot',
+      'formula.isReference',
       'batch.emulsionTypeMethod',
       'batch.emulsionTypeFound',
       'batch.emulsionTypeReason',

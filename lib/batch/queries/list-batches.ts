@@ -73,6 +73,8 @@ async function batchRows(db: Db, ids: string[]) {
       'batch.madeAt',
       'batch.createdAt',
       'batch.emulsionTypeFound',
+      'batch.productLot',
+      'formula.isReference',
       'formula.code as formulaCode',
       'formula.name as formulaName',
       'formula.emulsionType',

@@ -13,7 +13,10 @@ export const batchList = describeList<BatchRow>()({
       key: 'formula',
       title: 'formula',
       sort: 'text',
-      value: (row) => `${row.formulaName}, version ${row.versionNumber}`,
+      value: (row) =>
+        row.isReference
+          ? `${row.formulaName}, lot ${row.productLot}, a reference product`
+          : `${row.formulaName}, version ${row.versionNumber}`,
     },
     { key: 'size', title: 'size, g', kind: 'number', sort: 'number', value: (row) => row.sizeG },
     { key: 'yield', title: 'yield, g', kind: 'number', sort: 'number', value: (row) => row.yieldG },

@@ -14,6 +14,9 @@ export function jarsToRead(db: Db | Trx) {
     .innerJoin('jar', 'jar.id', 'pj.jarId')
     .innerJoin('station', 'station.id', 'jar.stationId')
     .innerJoin('batch', 'batch.id', 'jar.batchId')
+    .innerJoin('studyBatch as sb', (join) =>
+      join.onRef('sb.studyId', '=', 'pj.studyId').onRef('sb.batchId', '=', 'jar.batchId'),
+    )
     .innerJoin('formulaVersion as fv', 'fv.id', 'batch.formulaVersionId')
     .innerJoin('formula', 'formula.id', 'fv.formulaId')
     .leftJoin('person as opener', 'opener.id', 'pj.openedBy')
@@ -52,6 +55,7 @@ export function jarsToRead(db: Db | Trx) {
       'ss.isFreezeThaw',
       'ss.voice',
       'ss.position',
+      'ss.variant',
       'ss.temperatureC',
       'station.id as stationId',
       'station.name as stationName',
@@ -70,6 +74,7 @@ export function jarsToRead(db: Db | Trx) {
       'batch.code as batchCode',
       'formula.name as formulaName',
       'formula.emulsionType',
+      'sb.isReference',
     ])
     .select(sql<ProtocolPlan>`study.plan`.as('plan'))
 }

@@ -2,6 +2,7 @@ import { sql } from 'kysely'
 import type { Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
 import { namedJar } from '@/lib/jar/rules'
+import { standsAs } from '@/lib/protocol/rules/plan'
 import type { Standing } from '@/lib/science/series'
 import { fieldsOf, layersOf, worstStanding, type BenchField, type Layers, type Values } from '../rules'
 import { jarsToRead, type BenchJarRow } from './jars'
@@ -22,7 +23,9 @@ export type BenchJar = {
   asks: 'watch' | 'measuring' | 'repeat'
   state: 'due' | 'resting' | 'done' | 'missed'
   study: { id: string; code: string; title: string }
-  batch: { id: string; code: string; formulaName: string; emulsionType: string }
+  batch: { id: string; code: string; formulaName: string; emulsionType: string; isReference: boolean }
+  /** What sets it apart from an upright jar in the study's pack: "lying", "own pack: airless pump"; else empty. */
+  standsAs: string
   timeWeeks: number
   /** "week 12", "cycle 3". */
   label: string
@@ -159,7 +162,9 @@ export function benchJar(row: BenchJarRow, values: Values, today: string, now: s
       code: row.batchCode,
       formulaName: row.formulaName,
       emulsionType: row.emulsionType,
+      isReference: row.isReference,
     },
+    standsAs: standsAs(row.variant, row.plan.ownPack),
     timeWeeks: row.timeWeeks,
     label: row.label,
     dueOn: row.dueOn,

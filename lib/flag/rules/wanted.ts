@@ -39,6 +39,8 @@ function fromRules(frame: Frame, { unit, finding }: Assessed): WantedFlag[] {
   const latest = new Map<string, RuleFinding>()
   for (const rule of finding.rules) {
     if (rule.level === 'note') continue
+    // A reference is watched, not judged: only what would spoil the comparison wants an answer.
+    if (unit.batch.isReference && rule.level !== 'doubt') continue
     latest.set(rule.level === 'doubt' ? `${rule.rule} ${rule.readingId}` : `${rule.rule} ${rule.level}`, rule)
   }
   const context = sentenceContext(frame.study, unit.station, unit.attribute)

@@ -97,6 +97,7 @@ async function findBase(trx: Trx, code: string, versionId: string) {
     .select(['formulaVersion.targetPhLow', 'formulaVersion.targetPhHigh'])
     .where('formulaVersion.id', '=', versionId)
     .where('formula.code', '=', code)
+    .where('formula.isReference', '=', false)
     .executeTakeFirst()
   if (!base) throw refuse.notFound(`${code} has no such version to vary. Load the page again.`)
   return base

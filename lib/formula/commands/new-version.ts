@@ -11,6 +11,7 @@ export async function newFormulaVersion(trx: Trx, actor: Actor, code: string, in
     .selectFrom('formula')
     .select('id')
     .where('code', '=', code)
+    .where('isReference', '=', false)
     .forUpdate()
     .executeTakeFirst()
   if (!formula) throw refuse.notFound(`There is no formula ${code}. Look for it in the list of formulas.`)

@@ -67,6 +67,7 @@ async function findFormulas(db: Db, codes: string[]) {
     .select(['latest.versionId', 'latest.number as versionNumber'])
     .select((eb) => eb.ref('formula.levels').$castTo<Level[]>().as('levels'))
     .where('formula.code', 'in', codes)
+    .where('formula.isReference', '=', false)
     .execute()
   return rows.map((row) => ({ ...row, emulsionType: row.emulsionType as EmulsionType }))
 }
@@ -76,6 +77,12 @@ async function listSeries(db: Db, actor: Actor, formulaIds: string[]): Promise<C
     .selectFrom('series')
     .innerJoin('study', 'study.id', 'series.studyId')
     .innerJoin('batch', 'batch.id', 'series.batchId')
+    .innerJoin('studyBatch', (join) =>
+      join
+        .onRef('studyBatch.studyId', '=', 'series.studyId')
+        .onRef('studyBatch.batchId', '=', 'series.batchId')
+        .on('studyBatch.isReference', '=', false),
+    )
     .innerJoin('formulaVersion', 'formulaVersion.id', 'batch.formulaVersionId')
     .innerJoin('studyStation', 'studyStation.id', 'series.studyStationId')
     .innerJoin('station', 'station.id', 'studyStation.stationId')
@@ -103,6 +110,7 @@ async function listStudiesOf(db: Db, actor: Actor, formulaIds: string[]) {
     .select(['formulaVersion.formulaId', 'study.code', 'batch.code as batchCode'])
     .select('formulaVersion.number as versionNumber')
     .where(sql<boolean>`formula_version.formula_id = any(${formulaIds}::uuid[])`)
+    .where('studyBatch.isReference', '=', false)
     .where(studiesOf(actor))
     .orderBy('study.code')
     .execute()

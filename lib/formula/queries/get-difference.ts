@@ -18,6 +18,7 @@ export async function getDifference(db: Db, _actor: Actor, code: string, query: 
     .select(['formulaVersion.id', 'formulaVersion.number', 'formulaVersion.state', 'formulaVersion.note'])
     .select(['formulaVersion.targetPhLow', 'formulaVersion.targetPhHigh'])
     .where('formula.code', 'in', [code, otherCode])
+    .where('formula.isReference', '=', false)
     .orderBy('formulaVersion.number')
     .execute()
   const own = versions.filter((version) => version.code === code)

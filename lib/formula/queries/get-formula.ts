@@ -31,6 +31,7 @@ export async function getFormula(db: Db, _actor: Actor, code: string, number?: n
       'person.initials as createdBy',
     ])
     .where('formula.code', '=', code)
+    .where('formula.isReference', '=', false)
     .orderBy('formulaVersion.number')
     .execute()
   const shown = number ? versions.find((version) => version.number === number) : versions.at(-1)

@@ -27,6 +27,7 @@ export function formulaSource(db: Db, _actor: Actor, { q, filters }: Query): Sou
       left join formula_version latest on latest.id = figure.formula_version_id
       left join client on client.id = formula.client_id join person on person.id = formula.created_by`,
     where: [
+      sql<SqlBool>`not formula.is_reference`,
       ...(q ? [isNamed(typed)] : []),
       ...(type ? [sql<SqlBool>`formula.emulsion_type = ${type}`] : []),
       ...(packing ? [sql<SqlBool>`figure.is_high_internal_phase = ${packing === 'past the closest'}`] : []),

@@ -101,6 +101,7 @@ function wholeChanges(before: ProtocolPlan, after: ProtocolPlan): string[] {
     ...turned('Pack', before.pack, after.pack),
     ...turned('Own pack', before.ownPack, after.ownPack),
     ...turned('Matrixed', names(before), names(after)),
+    ...turned('Batches measured at a middle time point', before.batchMatrixing, after.batchMatrixing),
     ...turned('Bracketed', brackets(before), brackets(after)),
   ]
 }

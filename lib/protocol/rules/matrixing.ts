@@ -1,5 +1,6 @@
 import type { PlannedStation, ProtocolPlan } from '@/lib/protocol/schema'
 import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { batchMatrixingPrice } from './batch-matrixing'
 import { stationName } from './plan'
 
 /**
@@ -29,6 +30,7 @@ function thinned({ timePoints }: PlannedStation, attributes: AttributeKey[]) {
 export function priceOf(plan: ProtocolPlan): string[] {
   return [
     ...(plan.matrixing ? matrixingPrice(plan, plan.matrixing.attributes) : []),
+    ...batchMatrixingPrice(plan),
     ...bracketingPrice(plan),
   ]
 }

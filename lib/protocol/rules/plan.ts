@@ -75,6 +75,11 @@ export function variantOf({ light, orientation, isOwnPack }: PlannedStation): st
   return [lit, orientation, isOwnPack ? 'own pack' : null].filter(Boolean).join(', ')
 }
 
+/** The same for whoever stands before the jar, with the own pack by its name: "lying, own pack: airless pump". */
+export function standsAs(variant: string, ownPack: string | undefined): string {
+  return ownPack ? variant.replace('own pack', `own pack: ${ownPack}`) : variant
+}
+
 /** Weeks at which anything is pulled, each once, in order. */
 export function weeksOfPlan(plan: ProtocolPlan): number[] {
   const weeks = new Set(plan.stations.flatMap((station) => station.timePoints))

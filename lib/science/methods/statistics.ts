@@ -14,6 +14,23 @@ export const regressionMethod: Method = {
   topic: 'regression',
 }
 
+export const boundWideningMethod: Method = {
+  name: 'What fewer times cost',
+  formula: [
+    'Distance of the one-sided 95 % bound from the line: t quantile (n − 2) × root of (1 ÷ n + squared distance from the mean time ÷ sum of squares of the times), in scatters of one reading.',
+    'Wider by: 100 × (distance with the times that are left ÷ distance with all of them − 1).',
+  ],
+  inputs: [
+    { key: 'times', says: 'times read as the protocol says, weeks', unit: '' },
+    { key: 'kept', says: 'times that are left, weeks', unit: '' },
+    { key: 'at', says: 'told for week', unit: '' },
+    { key: 'width', says: 'distance with all times, scatters', unit: '' },
+    { key: 'keptWidth', says: 'distance with what is left, scatters', unit: '' },
+  ],
+  sources: [{ text: 'Confidence bound of the mean line as in ICH Q1E, 2003', mark: 'standard' }],
+  topic: null,
+}
+
 export const shelfLifeMethod: Method = {
   name: 'Supported months',
   formula: [

@@ -18,6 +18,7 @@ export type FrameBatch = {
   id: string
   code: string
   madeAt: string | null
+  isReference?: boolean
   lines: { percent: number; density: number; internal: boolean }[]
 }
 export type FrameRepeat = { id: string; repeatOf: string; attribute: string; state: string; jarCode: string }
@@ -63,7 +64,7 @@ async function getFrameStudy(db: Db | Trx, studyId: string) {
         from study_station ss
           join study_station_stay stay on stay.study_station_id = ss.id and stay.until_at is null
           join station st on st.id = stay.station_id where ss.study_id = s.id) as stations,
-      (select coalesce(jsonb_agg(jsonb_build_object('id', b.id, 'code', b.code, 'madeAt', b.made_at,
+      (select coalesce(jsonb_agg(jsonb_build_object('id', b.id, 'code', b.code, 'madeAt', b.made_at, 'isReference', sb.is_reference,
           'lines', (select coalesce(jsonb_agg(jsonb_build_object('percent', l.percent_thousandths / 1000.0,
               'density', l.density, 'internal', l.is_internal)), '[]')
             from formula_line l where l.formula_version_id = b.formula_version_id)) order by sb.position), '[]')

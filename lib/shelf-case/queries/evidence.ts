@@ -28,6 +28,8 @@ export async function loadEvidence(db: Db | Trx, actor: Actor, studyId: string) 
     .innerJoin('formula as f', 'f.id', 'fv.formulaId')
     .select(['b.id', 'b.code', 'b.madeAt', 'f.name as formulaName', 'f.emulsionType', 'fv.number'])
     .where('sb.studyId', '=', studyId)
+    // What stands beside the study for comparison supports no shelf life.
+    .where('sb.isReference', '=', false)
     .orderBy('sb.position')
     .execute()
   const stations = await db
@@ -61,6 +63,7 @@ export async function loadEvidence(db: Db | Trx, actor: Actor, studyId: string) 
     .groupBy(['ss.id', 'm.id', 'origin.name', 'target.name', 'p.initials'])
     .orderBy('m.movedAt')
     .execute()
+  const ids = batches.map((batch) => batch.id)
   const { assessed } = assessStudy(await loadFrame(db, studyId), null)
   const readings = await db
     .selectFrom('reading as r')
@@ -86,6 +89,7 @@ export async function loadEvidence(db: Db | Trx, actor: Actor, studyId: string) 
       'j.code as jar',
     ])
     .where('r.studyId', '=', studyId)
+    .where('r.batchId', 'in', ids)
     .orderBy('r.measuredAt')
     .orderBy('r.attribute')
     .orderBy('r.replicate')
@@ -107,6 +111,7 @@ export async function loadEvidence(db: Db | Trx, actor: Actor, studyId: string) 
       'p.initials as answeredBy',
     ])
     .where('f.studyId', '=', studyId)
+    .where('f.batchId', 'in', ids)
     .orderBy('f.number')
     .execute()
   const missed = await db
@@ -116,6 +121,7 @@ export async function loadEvidence(db: Db | Trx, actor: Actor, studyId: string) 
     .select(['j.code as jar', 'pull.label', 'pull.studyStationId', 'pj.missedReason'])
     .where('pj.studyId', '=', studyId)
     .where('pj.state', '=', 'missed')
+    .where('j.batchId', 'in', ids)
     .orderBy('pull.timeWeeks')
     .execute()
   const amendments = await db
@@ -130,15 +136,17 @@ export async function loadEvidence(db: Db | Trx, actor: Actor, studyId: string) 
     lab,
     batches,
     stations,
-    series: assessed.map(({ unit, input, finding }) => ({
-      batchId: unit.batch.id,
-      studyStationId: unit.station.id,
-      attribute: unit.attribute,
-      input,
-      finding,
-      // A jar's replicates are one reading to the rules, named by its first row.
-      rowIds: new Map(unit.jars.map((jar) => [jar.id, jar.ids])),
-    })),
+    series: assessed
+      .filter(({ unit }) => ids.includes(unit.batch.id))
+      .map(({ unit, input, finding }) => ({
+        batchId: unit.batch.id,
+        studyStationId: unit.station.id,
+        attribute: unit.attribute,
+        input,
+        finding,
+        // A jar's replicates are one reading to the rules, named by its first row.
+        rowIds: new Map(unit.jars.map((jar) => [jar.id, jar.ids])),
+      })),
     readings: readings.map((r) => ({ ...r, detail: r.detail as Record<string, unknown> })),
     flags,
     missed,

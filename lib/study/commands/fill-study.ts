@@ -14,10 +14,23 @@ import type { LabCalendar } from '@/lib/study/rules/working-days'
 
 // What a started study consists of: one statement a table, whatever the number of jars.
 
-export async function insertBatches(trx: Trx, studyId: string, batchIds: string[]): Promise<void> {
+export async function insertBatches(
+  trx: Trx,
+  studyId: string,
+  batchIds: string[],
+  referenceIds: string[],
+): Promise<void> {
   await trx
     .insertInto('studyBatch')
-    .values(batchIds.map((batchId, position) => ({ id: newId(), studyId, batchId, position })))
+    .values(
+      [...batchIds, ...referenceIds].map((batchId, position) => ({
+        id: newId(),
+        studyId,
+        batchId,
+        position,
+        isReference: referenceIds.includes(batchId),
+      })),
+    )
     .execute()
 }
 
@@ -85,14 +98,11 @@ export async function insertJars(
   trx: Trx,
   studyId: string,
   plan: ProtocolPlan,
-  batches: { id: string }[],
+  { batchIds, referenceIds }: { batchIds: string[]; referenceIds: string[] },
   stations: StudyStation[],
   random: () => number,
 ): Promise<JarRow[]> {
-  const planned = plannedJars(
-    plan,
-    batches.map((batch) => batch.id),
-  )
+  const planned = plannedJars(plan, batchIds, referenceIds)
   const codes = await freeCodes(trx, planned.length, random)
   const taken = await listTakenPlaces(
     trx,

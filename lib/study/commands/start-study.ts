@@ -22,8 +22,9 @@ import { listBatchesForStart } from '@/lib/study/queries/batches'
 import { dayIn } from '@/lib/study/rules/calendar'
 import { initialRows, type InitialRow } from '@/lib/study/rules/initial'
 import { notStarted, refuseInPart } from '@/lib/study/rules/in-part'
+import { plansOfBatches } from '@/lib/study/rules/jars'
 import { adjustedPlan, startedChoices } from '@/lib/study/rules/plan'
-import { refuseBatch, refusePlan, refuseShortBatch, refuseStations } from '@/lib/study/rules/refusals'
+import { refuseBatches, refusePlan, refuseShortBatch, refuseStations } from '@/lib/study/rules/refusals'
 import { chosenStations } from '@/lib/study/rules/stations'
 import type { LabCalendar } from '@/lib/study/rules/working-days'
 import type { StartedStudy } from '@/lib/study/schema'
@@ -52,14 +53,16 @@ export async function startStudy(
   refuseInPart(version.plan, input.adjustments, input.whyInPart)
   const plan = adjustedPlan(version.plan, input.adjustments)
   refusePlan(plan)
-  const batches = await findBatches(trx, input.batchIds)
-  batches.forEach(refuseBatch)
-  batches.forEach((batch) => refuseShortBatch(plan, batch))
+  const taken = { batchIds: unique(input.batchIds), referenceIds: unique(input.referenceIds) }
+  const batches = await findBatches(trx, [...taken.batchIds, ...taken.referenceIds])
+  refuseBatches(plan, batches, taken)
+  const plans = plansOfBatches(plan, taken.batchIds, taken.referenceIds)
+  plans.forEach((own, index) => refuseShortBatch(own.plan, batches[index]!))
   const lab = await listStations(trx, actor)
   const stations = refuseStations(
     plan,
     chosenStations(plan.stations, lab, startedChoices(version.plan, input.adjustments, input.stationChoices)),
-    batches.length,
+    taken,
     {
       protocolPlan: version.plan,
       adjustments: input.adjustments,
@@ -100,14 +103,10 @@ export async function startStudy(
       createdBy: actor.personId,
     })
     .execute()
-  await insertBatches(
-    trx,
-    input.id,
-    batches.map((batch) => batch.id),
-  )
+  await insertBatches(trx, input.id, taken.batchIds, taken.referenceIds)
   const studyStations = await insertStations(trx, input.id, plan, stations)
   const pulls = await insertPulls(trx, input.id, plan, studyStations, startedOn, calendar)
-  const jars = await insertJars(trx, input.id, plan, batches, studyStations, random)
+  const jars = await insertJars(trx, input.id, plan, taken, studyStations, random)
   await insertPullJars(trx, input.id, jars, pulls)
   await insertInitial(trx, actor, input.id, initial, startedAt)
   await insertNotStarted(
@@ -150,8 +149,11 @@ async function countJars(trx: Trx, studyId: string): Promise<number> {
   return jars
 }
 
-async function findBatches(trx: Trx, batchIds: string[]) {
-  const ids = [...new Set(batchIds)]
+function unique(ids: string[]): string[] {
+  return [...new Set(ids)]
+}
+
+async function findBatches(trx: Trx, ids: string[]) {
   const found = await listBatchesForStart(trx, ids)
   return ids.map((id) => {
     const batch = found.find((one) => one.id === id)

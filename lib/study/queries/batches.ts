@@ -10,7 +10,7 @@ function batches(db: Db) {
     .innerJoin('formula', 'formula.id', 'formulaVersion.formulaId')
     .select(['batch.id', 'batch.code', 'batch.state', 'batch.yieldG', 'batch.madeAt'])
     .select(['formula.code as formulaCode', 'formula.name as formulaName', 'formula.emulsionType'])
-    .select('formula.clientId')
+    .select(['formula.clientId', 'formula.isReference', 'batch.productLot'])
     .select(
       sql<Filled[]>`(
         select coalesce(jsonb_agg(filled), '[]') from (

@@ -143,7 +143,7 @@ function heat({ kind, temperatureC }: { kind: string; temperatureC: number | nul
   return kind === 'temperature' && temperatureC !== null ? temperatureC : -1000
 }
 
-/** The study's batches with what they are, and the share of their internal phase by mass. */
+/** The study's batches with what they are, references last, and the share of their internal phase by mass. */
 export async function listStudyBatches(db: Db, studyId: string) {
   const rows = await db
     .selectFrom('studyBatch')
@@ -151,7 +151,7 @@ export async function listStudyBatches(db: Db, studyId: string) {
     .innerJoin('formulaVersion', 'formulaVersion.id', 'batch.formulaVersionId')
     .innerJoin('formula', 'formula.id', 'formulaVersion.formulaId')
     .select(['batch.id', 'batch.code', 'formula.code as formulaCode', 'formula.name as formulaName'])
-    .select('formula.emulsionType')
+    .select(['formula.emulsionType', 'studyBatch.isReference', 'batch.productLot'])
     .select((eb) =>
       eb
         .selectFrom('formulaLine')

@@ -113,6 +113,7 @@ async function ledgerRows(db: Db, actor: Actor, ids: string[]) {
       title: study.title,
       state: study.state,
       batches: own.batches.map((batch) => batch.code),
+      references: own.references.map((batch) => batch.code),
       formulaName: own.batches[0]?.formulaName ?? '',
       clientName: study.clientName,
       endWeeks: study.endWeeks,

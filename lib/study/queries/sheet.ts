@@ -100,7 +100,12 @@ export function findingOf(page: {
   series: SeriesRow[]
   flags: OpenFlag[]
 }) {
-  const { study, stations, batches, pullJars, series, flags } = page
+  const { study, stations, pullJars } = page
+  // References stand beside the study: the finding is of its own batches.
+  const batches = page.batches.filter((batch) => !batch.isReference)
+  const isOwn = ({ batchId }: { batchId: string }) => batches.some((batch) => batch.id === batchId)
+  const series = page.series.filter(isOwn)
+  const flags = page.flags.filter(isOwn)
   const { today } = study
   const todays = pullJars.filter(
     (jar) =>
@@ -125,6 +130,7 @@ export function findingOf(page: {
     series,
     batchCodes: batches.map((batch) => batch.code),
     flags,
+    flagsBeside: page.flags.length - flags.length,
     today: { due: todays.length, done: todays.filter((jar) => jar.state === 'done').length },
     nextPullOn: next ?? null,
   })

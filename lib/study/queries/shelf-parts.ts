@@ -20,6 +20,7 @@ export async function listShelfParts(db: Db, studyIds: string[]) {
     .innerJoin('formulaVersion', 'formulaVersion.id', 'batch.formulaVersionId')
     .innerJoin('formula', 'formula.id', 'formulaVersion.formulaId')
     .select(['studyBatch.studyId', 'batch.id', 'batch.code', 'formula.name as formulaName'])
+    .select('studyBatch.isReference')
     .where(isOfThem)
     .orderBy('studyBatch.position')
     .execute()
@@ -75,15 +76,22 @@ export async function listShelfParts(db: Db, studyIds: string[]) {
     cases: grouped(cases),
   }
   return {
-    of: (studyId: string) => ({
-      stations: by.stations.get(studyId) ?? [],
-      batches: by.batches.get(studyId) ?? [],
-      series: by.series.get(studyId) ?? [],
-      pullJars: by.pullJars.get(studyId) ?? [],
-      readings: (by.readings.get(studyId) ?? []).map((reading) => ({ ...reading, readBy: '' })),
-      flags: by.flags.get(studyId) ?? [],
-      caseToSign: by.cases.get(studyId)?.[0]?.code ?? null,
-    }),
+    of: (studyId: string) => {
+      const all = by.batches.get(studyId) ?? []
+      const beside = new Set(all.filter((batch) => batch.isReference).map((batch) => batch.id))
+      const isOwn = ({ batchId }: { batchId: string }) => !beside.has(batchId)
+      return {
+        stations: by.stations.get(studyId) ?? [],
+        // What stands beside a study as a reference has no part in how the study stands.
+        batches: all.filter((batch) => !batch.isReference),
+        references: all.filter((batch) => batch.isReference),
+        series: (by.series.get(studyId) ?? []).filter(isOwn),
+        pullJars: by.pullJars.get(studyId) ?? [],
+        readings: (by.readings.get(studyId) ?? []).map((reading) => ({ ...reading, readBy: '' })),
+        flags: by.flags.get(studyId) ?? [],
+        caseToSign: by.cases.get(studyId)?.[0]?.code ?? null,
+      }
+    },
   }
 }
 

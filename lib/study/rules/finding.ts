@@ -29,6 +29,8 @@ export type FindingInput = {
   batchCodes: string[]
   /** What waits for an answer; a rule that fired and is not confirmed yet is a finding too. */
   flags: { studyStationId: string | null; attribute: string; rule: string }[]
+  /** Those on what stands beside the study: they wait too, and are no finding. */
+  flagsBeside?: number
   /** Jars asked for today, and those of them that are read. */
   today: { due: number; done: number }
   nextPullOn: string | null
@@ -224,9 +226,9 @@ function nearestSentence(input: FindingInput): string {
   return `Nearest its edge: ${inSentence(nearest.attribute)} ${where}, ${Math.round(nearest.used! * 100)} % of the band used.`
 }
 
-function waitingSentence({ flags: open, today, nextPullOn, state }: FindingInput): string {
-  const flags =
-    open.length > 0 ? `${counted(open.length, 'flag')} ${open.length === 1 ? 'wants' : 'want'} an answer` : ''
+function waitingSentence({ flags: own, flagsBeside = 0, today, nextPullOn, state }: FindingInput): string {
+  const open = own.length + flagsBeside
+  const flags = open > 0 ? `${counted(open, 'flag')} ${open === 1 ? 'wants' : 'want'} an answer` : ''
   if (state === 'closed') return flags ? `${capital(flags)}.` : 'The study has ended.'
   const jars =
     today.due > 0

@@ -1,4 +1,5 @@
-import { askedWeeks } from '@/lib/protocol/rules/plan'
+import { planOfBatch, type Turn } from '@/lib/protocol/rules/batch-matrixing'
+import { askedWeeks, jarsAtStation } from '@/lib/protocol/rules/plan'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
 
 export type PlannedJar = {
@@ -13,9 +14,34 @@ export type PlannedJar = {
   setAsideFor?: string
 }
 
+/** The batches of a study and what stands beside it. */
+export type TakenBatches = { batchIds: string[]; referenceIds: string[] }
+
+/** The plan as each batch follows it: batches may take turns, references are measured every time. */
+export function plansOfBatches(
+  plan: ProtocolPlan,
+  batchIds: string[],
+  referenceIds: string[] = [],
+): { batchId: string; plan: ProtocolPlan }[] {
+  const own = (batchId: string, turn: Turn) => ({ batchId, plan: planOfBatch(plan, turn) })
+  return [
+    ...batchIds.map((batchId, place) => own(batchId, { place, of: batchIds.length })),
+    ...referenceIds.map((batchId) => own(batchId, null)),
+  ]
+}
+
+/** Places that a station of the plan needs for all batches. */
+export function placesAt(plans: { plan: ProtocolPlan }[], position: number): number {
+  return plans.reduce((sum, { plan }) => sum + jarsAtStation(plan, plan.stations[position]!), 0)
+}
+
 /** Every jar of a study: what it is for, where it stands, when it is asked for. */
-export function plannedJars(plan: ProtocolPlan, batchIds: string[]): PlannedJar[] {
-  return batchIds.flatMap((batchId) => [
+export function plannedJars(
+  all: ProtocolPlan,
+  batchIds: string[],
+  referenceIds: string[] = [],
+): PlannedJar[] {
+  return plansOfBatches(all, batchIds, referenceIds).flatMap(({ batchId, plan }) => [
     ...plan.stations.flatMap((station, position) => [
       ...times(station.watchJars, () =>
         stored(batchId, position, 'watch', askedWeeks(plan, station, 'watch')),

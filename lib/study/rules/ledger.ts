@@ -9,6 +9,8 @@ export type LedgerRow = {
   title: string
   state: string
   batches: string[]
+  /** What stands beside them for comparison. */
+  references: string[]
   formulaName: string
   clientName: string | null
   startedOn: string

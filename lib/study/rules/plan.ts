@@ -1,6 +1,7 @@
 import { matrixed } from '@/lib/protocol/rules/matrixing'
-import { jarsOfPlan, weeksOfPlan } from '@/lib/protocol/rules/plan'
-import type { ProtocolPlan } from '@/lib/protocol/schema'
+import { askedWeeks, jarsOfPlan, weeksOfPlan } from '@/lib/protocol/rules/plan'
+import type { PlannedStation, ProtocolPlan } from '@/lib/protocol/schema'
+import { attributeOf } from '@/lib/reading/schema/attributes'
 import { fillFromGrams } from '@/lib/science/jar-grams'
 import type { StudyAdjustments } from '@/lib/study/schema'
 
@@ -17,9 +18,11 @@ export type FitOption = {
 /** The protocol's plan as this study follows it. */
 export function adjustedPlan(plan: ProtocolPlan, adjustments: StudyAdjustments): ProtocolPlan {
   const without = new Set(adjustments.leaveOutWeeks ?? [])
+  const fillG = adjustments.fillG ?? plan.fillG
   const adjusted = {
     ...plan,
-    fillG: adjustments.fillG ?? plan.fillG,
+    fillG,
+    fillHeightMm: fillG === plan.fillG ? plan.fillHeightMm : filledHeight(plan, fillG),
     retains: adjustments.leaveOutRetains ? 0 : plan.retains,
     stations: startedPositions(plan, adjustments).map((position) => {
       const station = plan.stations[position]!
@@ -33,7 +36,48 @@ export function adjustedPlan(plan: ProtocolPlan, adjustments: StudyAdjustments):
     }),
   }
   // With other middle time points, others of them are left out.
-  return plan.matrixing && without.size > 0 ? matrixed(adjusted, plan.matrixing.attributes) : adjusted
+  const timed = plan.matrixing && without.size > 0 ? matrixed(adjusted, plan.matrixing.attributes) : adjusted
+  const started = startedPositions(plan, adjustments)
+  return {
+    ...timed,
+    stations: timed.stations.map((station, index) => {
+      const isIn = (positions: number[] | undefined) => positions?.includes(started[index]!) ?? false
+      const fewer = isIn(adjustments.everySecondTime) ? everySecond(timed, station) : station
+      return {
+        ...fewer,
+        measuringJarsPerPull: isIn(adjustments.oneJarAPull)
+          ? Math.min(1, fewer.measuringJarsPerPull)
+          : fewer.measuringJarsPerPull,
+      }
+    }),
+  }
+}
+
+/** Of a straight-walled jar: a tenth of a millimetre is as close as it is read. */
+function filledHeight({ fillHeightMm, fillG: usualG }: ProtocolPlan, fillG: number): number {
+  return Number(((fillHeightMm * fillG) / usualG).toFixed(1))
+}
+
+/**
+ * A station at which every second of the middle pulls opens no jar. The sealed jars are looked at all the same; where
+ * none stands, the pull is left out.
+ */
+function everySecond(plan: ProtocolPlan, station: PlannedStation): PlannedStation {
+  const opened = askedWeeks(plan, station, 'measuring')
+  const weeks = opened.slice(1, -1).filter((_, index) => index % 2 === 0)
+  const isLooked =
+    station.watchJars > 0 && plan.attributes.some((one) => attributeOf(one.attribute).jar === 'watch')
+  const measured = plan.attributes.filter(({ attribute }) => attributeOf(attribute).jar === 'measuring')
+  if (!isLooked) {
+    // Cycles and legs are counted, so none of them can be left out.
+    if (station.kind !== 'temperature') return station
+    return { ...station, timePoints: station.timePoints.filter((week) => !weeks.includes(week)) }
+  }
+  const known = station.leftOut ?? []
+  const cells = weeks
+    .flatMap((week) => measured.map(({ attribute }) => ({ attribute, week })))
+    .filter((cell) => !known.some((one) => one.week === cell.week && one.attribute === cell.attribute))
+  return { ...station, leftOut: [...known, ...cells] }
 }
 
 /** Positions in the protocol's plan of the stations that start; the study's own plan holds these alone, in this order. */
@@ -52,11 +96,6 @@ export function startedChoices(
     const at = started.indexOf(position)
     return at === -1 ? [] : [{ position: at, stationId }]
   })
-}
-
-/** What of the adjustments is about places; the rest is about grams. */
-export function placeAdjustments({ leaveOutStations, spares }: StudyAdjustments): StudyAdjustments {
-  return { ...(leaveOutStations ? { leaveOutStations } : {}), ...(spares ? { spares } : {}) }
 }
 
 /** What would make a study fit a batch: less in each jar, fewer early weeks, no retains. */

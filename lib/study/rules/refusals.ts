@@ -6,19 +6,58 @@ import type { PlannedStation, ProtocolPlan } from '@/lib/protocol/schema'
 import { jarsFromGrams } from '@/lib/science/jar-grams'
 import { freedSentence, type Leaving } from '@/lib/station/rules/occupancy'
 import type { StudyAdjustments } from '@/lib/study/schema'
+import type { TakenBatches } from './jars'
 import { startedPositions, waysToFit } from './plan'
 import { placesNeeded, waysToStand } from './room'
 import { asksForLamps, freeIn, hasLamps, type StationOffer } from './stations'
 import { capital, counted } from './words'
 
-export type BatchOffer = { id: string; code: string; state: string; yieldG: number | null; takenG: number }
+export type BatchOffer = {
+  id: string
+  code: string
+  state: string
+  yieldG: number | null
+  takenG: number
+  /** A bought-in product. */
+  isReference: boolean
+}
 
 export function refusePlan(plan: ProtocolPlan): void {
   const missing = missingInPlan(plan)
   if (missing) throw refuse.invalid(missing, { protocolVersionId: 'This protocol is not complete.' })
 }
 
-export function refuseBatch(batch: BatchOffer): void {
+/** Which batches may take part, and as what. */
+export function refuseBatches(
+  plan: ProtocolPlan,
+  batches: BatchOffer[],
+  { batchIds, referenceIds }: TakenBatches,
+): void {
+  batches.forEach(refuseBatch)
+  const of = (id: string) => batches.find((batch) => batch.id === id)!
+  const both = referenceIds.find((id) => batchIds.includes(id))
+  if (both) {
+    throw refuse.invalid(
+      `${of(both).code} is chosen as a batch of the study and as a reference beside it. Choose one of the two.`,
+      { referenceIds: `${of(both).code} stands twice.` },
+    )
+  }
+  const bought = batchIds.map(of).find((batch) => batch.isReference)
+  if (bought) {
+    throw refuse.invalid(
+      `${bought.code} is a bought-in product, so it can only stand beside a study as a reference.`,
+      { batchIds: `${bought.code} is a reference product.` },
+    )
+  }
+  if (plan.batchMatrixing && batchIds.length < 2) {
+    throw refuse.conflict(
+      `This protocol measures ${plan.batchMatrixing} of the batches at a middle time point, by turns, so it takes at least two batches. Choose another batch, or a protocol that measures all.`,
+      { kind: 'turns' },
+    )
+  }
+}
+
+function refuseBatch(batch: BatchOffer): void {
   if (batch.state === 'released') return
   const why =
     batch.state === 'rejected' ? 'was rejected, so no study can start on it' : `is still ${batch.state}`
@@ -61,14 +100,14 @@ export type Room = {
 export function refuseStations<T extends StationOffer>(
   plan: ProtocolPlan,
   chosen: (T | null)[],
-  batchCount: number,
+  taken: TakenBatches,
   room: Room,
 ): T[] {
   plan.stations.forEach((planned, position) => {
     const station = chosen[position]
     if (!station) return
     refuseChoice(plan, planned, position, chosen)
-    refuseFull(plan, position, chosen, batchCount, room)
+    refuseFull(plan, position, chosen, taken, room)
   })
   return plan.stations.map((planned, position) => {
     const station = chosen[position]
@@ -133,12 +172,12 @@ function refuseFull(
   plan: ProtocolPlan,
   position: number,
   chosen: (StationOffer | null)[],
-  batchCount: number,
+  taken: TakenBatches,
   { protocolPlan, adjustments, stations, leavings, today }: Room,
 ): void {
   const station = chosen[position]!
   const free = freeIn(station)
-  const needed = placesNeeded(plan, chosen, station.id, batchCount)
+  const needed = placesNeeded(plan, chosen, station.id, taken)
   if (free >= needed) return
   const protocolPosition = startedPositions(protocolPlan, adjustments)[position]!
   const options = waysToStand(
@@ -147,7 +186,7 @@ function refuseFull(
     { position, protocolPosition },
     chosen,
     stations,
-    batchCount,
+    taken,
     leavings,
     today,
   )

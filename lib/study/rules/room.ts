@@ -1,10 +1,10 @@
-import { jarsAtStation, stationName } from '@/lib/protocol/rules/plan'
+import { stationName } from '@/lib/protocol/rules/plan'
 import type { PlannedStation, ProtocolPlan } from '@/lib/protocol/schema'
 import { fitsFrom, type Leaving } from '@/lib/station/rules/occupancy'
 import { capacityOf } from '@/lib/station/rules/places'
 import type { StudyAdjustments } from '@/lib/study/schema'
 import { nominalDay, spokenDay } from './calendar'
-import { plannedJars } from './jars'
+import { placesAt, plannedJars, plansOfBatches, type TakenBatches } from './jars'
 import { pullsOf } from './pulls'
 import { fittingStations, freeIn, type StationOffer } from './stations'
 import { counted, numberWord } from './words'
@@ -22,10 +22,13 @@ export function placesNeeded(
   plan: ProtocolPlan,
   chosen: (StationOffer | null)[],
   stationId: string,
-  batchCount: number,
+  { batchIds, referenceIds }: TakenBatches,
 ): number {
-  const sharing = plan.stations.filter((_, position) => chosen[position]?.id === stationId)
-  return sharing.reduce((sum, one) => sum + jarsAtStation(plan, one), 0) * batchCount
+  const plans = plansOfBatches(plan, batchIds, referenceIds)
+  const sharing = plan.stations.flatMap((_, position) =>
+    chosen[position]?.id === stationId ? [position] : [],
+  )
+  return sharing.reduce((sum, position) => sum + placesAt(plans, position), 0)
 }
 
 /** When the jars of a study that starts today would leave this station, as far as its plan tells. */
@@ -33,15 +36,15 @@ export function plannedLeavings(
   plan: ProtocolPlan,
   chosen: (StationOffer | null)[],
   stationId: string,
-  batchCount: number,
+  { batchIds, referenceIds }: TakenBatches,
   today: string,
 ): Pick<Leaving, 'leavesOn' | 'jars'>[] {
   const endOn = nominalDay(today, plan.endWeeks)
-  return plannedJars(plan, ['one']).flatMap((jar) => {
+  return plannedJars(plan, batchIds, referenceIds).flatMap((jar) => {
     if (jar.position === null || chosen[jar.position]?.id !== stationId) return []
     const [week] = jar.weeks
     const leavesOn = jar.kind === 'measuring' && week !== undefined ? nominalDay(today, week) : endOn
-    return [{ leavesOn, jars: batchCount }]
+    return [{ leavesOn, jars: 1 }]
   })
 }
 
@@ -52,20 +55,21 @@ export function waysToStand(
   at: { position: number; protocolPosition: number },
   chosen: (StationOffer | null)[],
   stations: StationOffer[],
-  batchCount: number,
+  taken: TakenBatches,
   leavings: Leaving[],
   today: string,
 ): RoomOption[] {
   const planned = plan.stations[at.position]!
   const station = chosen[at.position]!
   const name = stationName(planned, at.position)
-  const needed = placesNeeded(plan, chosen, station.id, batchCount)
+  const needed = placesNeeded(plan, chosen, station.id, taken)
   const short = needed - freeIn(station)
-  const own = jarsAtStation(plan, planned) * batchCount
+  const own = placesAt(plansOfBatches(plan, taken.batchIds, taken.referenceIds), at.position)
+  const batchCount = taken.batchIds.length + taken.referenceIds.length
   return [
     ...otherStations(planned, station, stations, own),
     ...fewerSpares(planned, name, adjustments, at.protocolPosition, short, batchCount),
-    ...fewerBatches(station, needed, batchCount),
+    ...fewerBatches(plan, chosen, station, taken),
     ...(plan.stations.length > 1
       ? [
           {
@@ -125,9 +129,21 @@ function fewerSpares(
   ]
 }
 
-function fewerBatches(station: StationOffer, needed: number, batchCount: number): RoomOption[] {
-  const fitting = Math.floor(freeIn(station) / (needed / batchCount))
-  if (fitting < 1 || fitting >= batchCount) return []
+/** Of the study's own batches; what stands beside them stays. */
+function fewerBatches(
+  plan: ProtocolPlan,
+  chosen: (StationOffer | null)[],
+  station: StationOffer,
+  { batchIds, referenceIds }: TakenBatches,
+): RoomOption[] {
+  const batchCount = batchIds.length
+  const fitting =
+    batchIds.findLastIndex(
+      (_, last) =>
+        placesNeeded(plan, chosen, station.id, { batchIds: batchIds.slice(0, last + 1), referenceIds }) <=
+        freeIn(station),
+    ) + 1
+  if (fitting < (plan.batchMatrixing ? 2 : 1) || fitting >= batchCount) return []
   return [
     {
       kind: 'batches',

@@ -4,7 +4,7 @@ import { studyRights } from '@/components/study/rights'
 import { StudyCurves } from '@/components/study/study-curves'
 import { page } from '@/lib/http/page'
 import { getCurves } from '@/lib/study/queries/curves'
-import { studyKeys } from '@/lib/study/schema'
+import { curvesQuery, studyKeys } from '@/lib/study/schema'
 import { found } from '../../found'
 
 export const permission = 'study.read'
@@ -21,13 +21,15 @@ export async function generateMetadata({ params }: Props): Promise<Metadata> {
 export default async function CurvesPage({ params, searchParams }: Props) {
   const { actor, db } = await page(permission)
   const code = decodeURIComponent((await params).code)
-  const { batch, station } = await searchParams
-  const curves = await found(getCurves(db, actor, code))
+  const { batch, station, ...query } = await searchParams
+  const { beside } = curvesQuery.parse(query)
+  const curves = await found(getCurves(db, actor, code, beside))
   return (
-    <SWRConfig value={{ fallback: { [studyKeys.curves(code)]: curves } }}>
+    <SWRConfig value={{ fallback: { [studyKeys.curves(code, beside)]: curves } }}>
       <StudyCurves
         code={code}
         rights={studyRights(actor)}
+        beside={beside}
         batch={typeof batch === 'string' ? batch : null}
         station={typeof station === 'string' ? station : null}
       />
