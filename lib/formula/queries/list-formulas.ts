@@ -123,7 +123,7 @@ export type FormulaRow = Awaited<ReturnType<typeof formulaRows>>[number]
 /** Of all formulas, whatever is searched for. */
 async function countFormulas(db: Db) {
   const { rows } = await sql<{ all: number; high: number; drafts: number }>`
-    select (select count(*) from formula) as "all",
+    select (select count(*) from formula where not is_reference) as "all",
       (select count(*) from formula_figure where is_high_internal_phase) as high,
       (select count(*) from formula_version where state = 'draft') as drafts
   `.execute(db)
