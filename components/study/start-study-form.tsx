@@ -32,6 +32,7 @@ import {
   placesOf,
   planOf,
   savingsFor,
+  takenBatches,
   whyNot,
   type Draft,
   type Need,
@@ -158,7 +159,7 @@ export function StartStudyForm({ offer, batchCode, protocolCode }: Props) {
             </div>
           </Section>
           {plan ? <StationChoices {...{ offer, draft, set, fields }} endWeeks={plan.endWeeks} /> : null}
-          {plan ? <StartCalendar plan={plan} batchCount={draft.batchIds.length} lab={offer.lab} /> : null}
+          {plan ? <StartCalendar plan={plan} batchCount={takenBatches(draft).length} lab={offer.lab} /> : null}
         </div>
         <div className="grid content-start gap-8">
           {needs.map((need) => (

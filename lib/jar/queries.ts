@@ -10,6 +10,9 @@ function jars(db: Db, actor: Actor) {
     .selectFrom('jar')
     .innerJoin('study', 'study.id', 'jar.studyId')
     .innerJoin('batch', 'batch.id', 'jar.batchId')
+    .innerJoin('studyBatch', (join) =>
+      join.onRef('studyBatch.studyId', '=', 'jar.studyId').onRef('studyBatch.batchId', '=', 'jar.batchId'),
+    )
     .leftJoin('studyStation', 'studyStation.id', 'jar.studyStationId')
     .leftJoin('station', 'station.id', 'jar.stationId')
     .select([
@@ -29,6 +32,7 @@ function jars(db: Db, actor: Actor) {
       'study.title as studyTitle',
       'study.startedOn',
       'batch.code as batchCode',
+      'studyBatch.isReference',
       'studyStation.id as studyStationId',
       'studyStation.temperatureC',
       'studyStation.isFreezeThaw',

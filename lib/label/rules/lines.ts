@@ -14,7 +14,8 @@ type Labelled = Pick<
   | 'place'
   | 'temperatureC'
 > &
-  Pick<JarRow, 'isFreezeThaw' | 'stationName' | 'studyStationId' | 'variant'>
+  Pick<JarRow, 'isFreezeThaw' | 'stationName' | 'studyStationId' | 'variant'> &
+  Partial<Pick<JarRow, 'isReference'>>
 
 /** What a person reads on a label: the code with its station, then the lines, what matters most first. */
 export function labelWords(jar: Labelled, ownPack: string | null): { code: string; lines: string[] } {
@@ -23,7 +24,7 @@ export function labelWords(jar: Labelled, ownPack: string | null): { code: strin
   return {
     code: namedJar(jar.code, station),
     lines: [
-      `${jar.studyCode}, ${jar.batchCode}`,
+      `${jar.studyCode}, ${jar.batchCode}${jar.isReference ? ', a reference' : ''}`,
       kindOf(jar),
       ...howOf(jar, ownPack),
       whereOf(jar),

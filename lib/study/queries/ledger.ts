@@ -63,7 +63,9 @@ const worst = sql`(select coalesce(max(
         and flag.rule in ('out', 'onset') and flag.study_station_id = series.study_station_id
         and flag.batch_id = series.batch_id and flag.attribute = series.attribute) then 100000 else 0 end
     + least(coalesce(series.used, 0), 99999)), 0)
-  from series where series.study_id = study.id)`
+  from series join study_batch on study_batch.study_id = series.study_id and study_batch.batch_id = series.batch_id
+    and not study_batch.is_reference
+  where series.study_id = study.id)`
 
 const nextPullOn = sql`(select min(pull.due_on) from pull_jar join pull on pull.id = pull_jar.pull_id
   where pull_jar.study_id = study.id and pull_jar.state in ('due', 'resting'))`
