@@ -159,7 +159,9 @@ export function StartStudyForm({ offer, batchCode, protocolCode }: Props) {
             </div>
           </Section>
           {plan ? <StationChoices {...{ offer, draft, set, fields }} endWeeks={plan.endWeeks} /> : null}
-          {plan ? <StartCalendar plan={plan} batchCount={takenBatches(draft).length} lab={offer.lab} /> : null}
+          {plan ? (
+            <StartCalendar plan={plan} batchCount={takenBatches(draft).length} lab={offer.lab} />
+          ) : null}
         </div>
         <div className="grid content-start gap-8">
           {needs.map((need) => (
