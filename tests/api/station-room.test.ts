@@ -165,7 +165,7 @@ describe('moving jars', () => {
     await study(a)
     const jars = (await at(a)).map((jar) => jar.id)
     const list = await call((await import('@/app/api/stations/route')).GET, { cookie: manager.cookie })
-    const row = list.body.find((one: { id: string }) => one.id === off)
+    const row = list.body.rows.find((one: { id: string }) => one.id === off)
     const off1 = await call(changeRoute, {
       cookie: manager.cookie,
       params: { id: off },
@@ -201,7 +201,7 @@ describe('moving jars', () => {
     const a = await station('Full of jars', 45, 20)
     await study(a)
     const list = await call((await import('@/app/api/stations/route')).GET, { cookie: manager.cookie })
-    const row = list.body.find((one: { id: string }) => one.id === a)
+    const row = list.body.rows.find((one: { id: string }) => one.id === a)
     const change = (body: object) =>
       call(changeRoute, { cookie: manager.cookie, params: { id: a }, body: { ...row, ...body } })
     const off = await change({ isActive: false })

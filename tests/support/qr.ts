@@ -1,6 +1,6 @@
 /**
  * Reads a QR symbol of version 1 from its modules as ISO/IEC 18004 lays them out: format information, mask, codewords
- * in their zigzag, alphanumeric segment. Written from the standard's figures and on its own, so that it does not share
+ * in their zigzag, segments of digits and alphanumeric ones. Written from the standard's figures and on its own, so that it does not share
  * a mistake with what drew the symbol. Damage is not corrected: a printed file has none.
  */
 export function readQr(dark: boolean[][]): string {
@@ -21,7 +21,7 @@ export function readQr(dark: boolean[][]): string {
     }
     isUp = !isUp
   }
-  return alphanumeric(bits)
+  return segments(bits)
 }
 
 const finders = [
@@ -66,15 +66,38 @@ const masks: ((i: number, j: number) => boolean)[] = [
   (i, j) => (((i + j) % 2) + ((i * j) % 3)) % 2 === 0,
 ]
 
-function alphanumeric(bits: number[]): string {
+/** Data codewords of version 1 at correction H, in bits. */
+const dataBits = 72
+
+/** A code of digits alone, or one that ends in many, is written in digits where that is shorter. */
+function segments(bits: number[]): string {
   let at = 0
+  let text = ''
   const take = (count: number) => {
     const value = parseInt(bits.slice(at, at + count).join(''), 2)
     at += count
     return value
   }
-  if (take(4) !== 0b0010) throw new Error('not alphanumeric')
-  const length = take(9)
+  while (at + 4 <= dataBits) {
+    const mode = take(4)
+    if (mode === 0) break
+    if (mode === 0b0001) text += digits(take, take(10))
+    else if (mode === 0b0010) text += alphanumeric(take, take(9))
+    else throw new Error(`mode ${mode} is neither digits nor alphanumeric`)
+  }
+  return text
+}
+
+function digits(take: (count: number) => number, length: number): string {
+  let text = ''
+  for (let left = length; left > 0; left -= 3) {
+    const group = Math.min(left, 3)
+    text += String(take([0, 4, 7, 10][group]!)).padStart(group, '0')
+  }
+  return text
+}
+
+function alphanumeric(take: (count: number) => number, length: number): string {
   let text = ''
   while (text.length + 1 < length) {
     const pair = take(11)
