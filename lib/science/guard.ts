@@ -62,7 +62,9 @@ export function assertComputable<T>(field: string, result: T): T {
 
 export function isFiniteThroughout(value: unknown): boolean {
   if (typeof value === 'number') return Number.isFinite(value)
+  if (typeof value !== 'object' || value === null) return true
   if (Array.isArray(value)) return value.every(isFiniteThroughout)
-  if (value !== null && typeof value === 'object') return Object.values(value).every(isFiniteThroughout)
+  const fields = value as Record<string, unknown>
+  for (const key in fields) if (!isFiniteThroughout(fields[key])) return false
   return true
 }

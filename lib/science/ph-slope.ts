@@ -2,6 +2,7 @@ import { assertComputable, assertFinite, ScienceError } from './guard'
 import { kelvin } from './kelvin'
 import { gasConstant } from './mean-kinetic-temperature'
 import { centredSums } from './regression'
+import { apartFrom, isAbove } from './rounding'
 
 /** C/mol, CODATA 2018. */
 const faraday = 96485.33212
@@ -47,9 +48,9 @@ export function phSlope({ points, temperatureC }: PhSlopeInput): PhSlope {
 }
 
 function efficiencyDoubt(percent: number): string | null {
-  if (percent >= phEfficiencyRange.low && percent <= phEfficiencyRange.high) return null
+  const isUnder = isAbove(phEfficiencyRange.low, percent)
+  if (!isUnder && !isAbove(percent, phEfficiencyRange.high)) return null
   if (percent <= 0) return 'The slope has the wrong sign: check which buffer stood in which beaker'
-  const side =
-    percent < phEfficiencyRange.low ? `under ${phEfficiencyRange.low}` : `over ${phEfficiencyRange.high}`
-  return `The slope is ${percent.toFixed(1)} % of the theoretical one, ${side} %`
+  const limit = isUnder ? phEfficiencyRange.low : phEfficiencyRange.high
+  return `The slope is ${apartFrom(limit, percent)} % of the theoretical one, ${isUnder ? 'under' : 'over'} ${limit} %`
 }

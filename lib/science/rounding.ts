@@ -29,3 +29,12 @@ export function exceeds(ratio: number, limit: number): boolean {
 export function asDecimal(value: number): number {
   return Number(value.toPrecision(digits))
 }
+
+/** With one decimal, or with as many more as make it read otherwise than its limit: 94.96 is not 95.0 under 95. */
+export function apartFrom(limit: number, value: number): string {
+  for (let places = 1; places < digits; places++) {
+    const shown = value.toFixed(places)
+    if (Number(shown) !== limit || value === limit) return shown
+  }
+  return String(value)
+}

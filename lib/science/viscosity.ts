@@ -1,4 +1,5 @@
 import { assertComputable, assertPositive, ScienceError } from './guard'
+import { apartFrom } from './rounding'
 
 /** Torque is read between these, in % of full scale [practice]. */
 export const torqueRange = { low: 10, high: 100 } as const
@@ -53,10 +54,10 @@ export function torqueErrorPercent(torquePercent: number): number {
 export function torqueDoubt(torquePercent: number, bandPercent?: number): string | null {
   const error = torqueErrorPercent(torquePercent)
   if (torquePercent < torqueRange.low) {
-    return `Torque is ${show(torquePercent)} %, under ${torqueRange.low} %: the reading is uncertain by ${show(error)} %`
+    return `Torque is ${apartFrom(torqueRange.low, torquePercent)} %, under ${torqueRange.low} %: the reading is uncertain by ${show(error)} %`
   }
   if (torquePercent > torqueRange.high) {
-    return `Torque is ${show(torquePercent)} %, beyond the end of the scale`
+    return `Torque is ${apartFrom(torqueRange.high, torquePercent)} %, beyond the end of the scale`
   }
   if (bandPercent !== undefined) {
     if (!(bandPercent >= 0)) throw new ScienceError('bandPercent', 'must not be negative')

@@ -129,6 +129,8 @@ describe('pH', () => {
     expect(ideal.offsetMv).toBeCloseTo(3, 9)
     expect(ideal.doubt).toBeNull()
     expect(phSlope({ points: points(0.93), temperatureC: 25 }).doubt).toContain('93.0 %')
+    expect(phSlope({ points: points(0.9496), temperatureC: 25 }).doubt).toContain('94.96 %')
+    expect(phSlope({ points: points(1.0500004), temperatureC: 25 }).doubt).toContain('105.00004 %')
     expect(phSlope({ points: points(-1), temperatureC: 25 }).doubt).toContain('wrong sign')
     expect(() => phSlope({ points: points(1).slice(0, 1), temperatureC: 25 })).toThrow(
       /^points: needs at least 2/,
@@ -242,6 +244,8 @@ describe('viscosity and separation', () => {
     })
     expect(viscosity({ torquePercent: 62, spindleConstant: 10000, rpm: 10 }).mPas).toBe(62000)
     expect(viscosity({ torquePercent: 6, factor: 1000 }).doubt).toContain('under 10 %')
+    expect(viscosity({ torquePercent: 9.96, factor: 1000 }).doubt).toMatch(/^Torque is 9\.96 %, under 10 %/)
+    expect(viscosity({ torquePercent: 100.04, factor: 1000 }).doubt).toContain('is 100.04 %')
     expect(viscosity({ torquePercent: 101, factor: 1000 }).doubt).toContain('beyond the end of the scale')
     expect(viscosity({ torquePercent: 12, factor: 1000, bandPercent: 20 }).doubt).toContain(
       'a third of the band',
