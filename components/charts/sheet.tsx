@@ -61,6 +61,7 @@ export function Sheet({
           points={layout.points}
           todayWeeks={todayWeeks}
           width={layout.width}
+          left={coverWidth}
           caption=""
         />
         <div className="absolute inset-y-0 left-0 bg-ground" style={{ width: coverWidth }} aria-hidden>

@@ -1,4 +1,4 @@
-import { dayAfter, dayName, rulerDates, rulerNumbers, timeLabel, unitOf } from './time-scale'
+import { dayAfter, dayName, rulerDates, rulerNumbers, tagMiddle, timeLabel, unitOf } from './time-scale'
 import { weeksPerMonth } from '@/lib/science/months'
 import type { TimeScale } from './time-scale'
 
@@ -11,15 +11,20 @@ export type TimeRulerProps = {
   points: number[]
   todayWeeks: number | null
   width: number
+  /** Where it begins to be seen: what covers its left end is that wide. */
+  left?: number
   /** What stands left of zero; the unit where nothing is said. */
   caption?: string
 }
 
 /** One ruler true to scale: weeks or months below, days above, today's black tag. Its line lies at y 52. */
-export function TimeRuler({ scale, startOn, points, todayWeeks, width, caption }: TimeRulerProps) {
+export function TimeRuler({ scale, startOn, points, todayWeeks, width, left = 0, caption }: TimeRulerProps) {
   const unit = unitOf(scale.endWeeks)
   const shownToday =
     todayWeeks !== null && todayWeeks >= 0 && todayWeeks <= scale.endWeeks ? todayWeeks : null
+  const tagX = shownToday === null ? null : tagMiddle(scale.x(shownToday), left, width)
+  // On a study's first day the tag stands where the unit does, which then goes before it or gives way.
+  const captionX = Math.min(scale.zero - 22, tagX === null ? Infinity : tagX - 54)
   const step = unit === 'month' ? weeksPerMonth : 1
   const small = Array.from(
     { length: Math.floor(scale.endWeeks / step + 1e-6) + 1 },
@@ -45,12 +50,12 @@ export function TimeRuler({ scale, startOn, points, todayWeeks, width, caption }
       {points.map((weeks) => (
         <path key={weeks} d={`M${scale.x(weeks)} 52v-11`} stroke="var(--ink)" strokeWidth={1.75} />
       ))}
-      {rulerNumbers(points, scale, shownToday).map((weeks) => (
+      {rulerNumbers(points, scale, tagX).map((weeks) => (
         <text key={weeks} x={scale.x(weeks)} y={36} fontSize={17} fontWeight={600} textAnchor="middle">
           {timeLabel(weeks, unit)}
         </text>
       ))}
-      {rulerDates(points, startOn, scale, shownToday).map(({ weeks, text }) => (
+      {rulerDates(points, startOn, scale, tagX).map(({ weeks, text }) => (
         <text
           key={weeks}
           x={isAtEnd(weeks) ? width : scale.x(weeks)}
@@ -62,31 +67,32 @@ export function TimeRuler({ scale, startOn, points, todayWeeks, width, caption }
           {text}
         </text>
       ))}
-      <text x={scale.zero - 22} y={36} fontSize={15} textAnchor="end" style={{ fill: 'var(--soft)' }}>
-        {caption ?? unit}
-      </text>
-      {shownToday === null ? null : (
-        <TodayTag x={scale.x(shownToday)} width={width} startOn={startOn} weeks={shownToday} unit={unit} />
+      {captionX < 30 ? null : (
+        <text x={captionX} y={36} fontSize={15} textAnchor="end" style={{ fill: 'var(--soft)' }}>
+          {caption ?? unit}
+        </text>
+      )}
+      {shownToday === null || tagX === null ? null : (
+        <TodayTag x={scale.x(shownToday)} middle={tagX} startOn={startOn} weeks={shownToday} unit={unit} />
       )}
     </svg>
   )
 }
 
+/** On a study's first and last day the tag steps aside, and its point still stands on the day. */
 function TodayTag({
   x,
-  width,
+  middle,
   startOn,
   weeks,
   unit,
 }: {
   x: number
-  width: number
+  middle: number
   startOn: string
   weeks: number
   unit: 'week' | 'month'
 }) {
-  // On a study's last day the tag steps aside, and its point still stands on the day.
-  const middle = Math.min(x, width - 48)
   return (
     <g>
       <path d={`M${x} 44V${RULER_HEIGHT}`} stroke="var(--ink)" strokeWidth={1.25} />

@@ -39,6 +39,14 @@ export function timeScale(zero: number, end: number, endWeeks: number): TimeScal
 /** Half of today's tag and half of a day's name beside it. */
 const TAG_ROOM = 84
 
+/** Half of today's tag with a hair beside it. */
+const TAG_HALF = 48
+
+/** The middle of today's tag: over its day, and aside where the tag would run out at either end of the ruler. */
+export function tagMiddle(x: number, left: number, width: number): number {
+  return Math.max(left + TAG_HALF, Math.min(x, width - TAG_HALF))
+}
+
 export type RulerDate = { weeks: number; text: string }
 
 /**
@@ -49,12 +57,12 @@ export function rulerDates(
   points: number[],
   startOn: string,
   scale: TimeScale,
-  todayWeeks: number | null,
+  tagX: number | null,
   apart = 110,
 ): RulerDate[] {
   const isClear = (weeks: number, others: number[]) =>
     others.every((other) => Math.abs(scale.x(weeks) - scale.x(other)) >= apart) &&
-    (todayWeeks === null || Math.abs(scale.x(weeks) - scale.x(todayWeeks)) >= TAG_ROOM)
+    (tagX === null || Math.abs(scale.x(weeks) - tagX) >= TAG_ROOM)
   const kept: number[] = []
   const [first, last] = [points[0], points.at(-1)]
   for (const weeks of [last, first, ...points.slice(1, -1)])
@@ -70,17 +78,12 @@ export function rulerDates(
 }
 
 /** The points whose number is written: every point that keeps `apart` pixels from the one before. */
-export function rulerNumbers(
-  points: number[],
-  scale: TimeScale,
-  todayWeeks: number | null,
-  apart = 26,
-): number[] {
+export function rulerNumbers(points: number[], scale: TimeScale, tagX: number | null, apart = 26): number[] {
   const kept: number[] = []
   for (const weeks of points) {
     const before = kept.at(-1)
     if (before !== undefined && scale.x(weeks) - scale.x(before) < apart) continue
-    if (todayWeeks !== null && Math.abs(scale.x(weeks) - scale.x(todayWeeks)) < TAG_ROOM - 26) continue
+    if (tagX !== null && Math.abs(scale.x(weeks) - tagX) < TAG_ROOM - 26) continue
     kept.push(weeks)
   }
   return kept

@@ -6,15 +6,16 @@ import { Section } from '@/components/ui/section'
 import { stationName } from '@/lib/protocol/rules/plan'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
 import type { LabWorkload } from '@/lib/study/queries/workload'
+import type { TakenBatches } from '@/lib/study/rules/jars'
 import { offTheirDay, pullsOf, type DayGroup } from '@/lib/study/rules/pulls'
 import { capital, counted, listed } from '@/lib/study/rules/words'
 import { namedDay } from '@/lib/study/rules/working-days'
 import { changeText, dueOfPlan, fullestChanged, workloadOf } from '@/lib/study/rules/workload'
 
-type Props = { plan: ProtocolPlan; batchCount: number; lab: LabWorkload }
+type Props = { plan: ProtocolPlan; taken: TakenBatches; lab: LabWorkload }
 
 /** On which days the study will be pulled, which pulls a closed day moves, and what that makes of the lab's weeks. */
-export function StartCalendar({ plan, batchCount, lab }: Props) {
+export function StartCalendar({ plan, taken, lab }: Props) {
   const { today, calendar } = lab
   const off = useMemo(
     () =>
@@ -33,20 +34,20 @@ export function StartCalendar({ plan, batchCount, lab }: Props) {
     <Section title="When" sentence={sentenceOf(total, pullsIn(moved), pullsIn(stuck))}>
       {stuck.length > 0 ? <Days groups={stuck} title="No working day in the window" /> : null}
       {moved.length > 0 ? <Days groups={moved} title="Moved to the nearest working day" /> : null}
-      <Weeks plan={plan} batchCount={Math.max(1, batchCount)} lab={lab} />
+      <Weeks plan={plan} taken={taken} lab={lab} />
     </Section>
   )
 }
 
-function Weeks({ plan, batchCount, lab }: Props) {
+function Weeks({ plan, taken, lab }: Props) {
   const { today, calendar, due } = lab
   const { before, after } = useMemo(() => {
-    const own = dueOfPlan(plan, batchCount, today, calendar)
+    const own = dueOfPlan(plan, taken, today, calendar)
     return {
       before: workloadOf(due, calendar, today),
       after: workloadOf([...due, ...own], calendar, today),
     }
-  }, [plan, batchCount, today, calendar, due])
+  }, [plan, taken, today, calendar, due])
   const fullest = fullestChanged(before, after)
   return (
     <div className="mt-4">

@@ -71,6 +71,11 @@ export function takenBatches({ batchIds, referenceIds }: Draft): string[] {
   return [...batchIds, ...referenceIds]
 }
 
+/** Whose jars are counted: before a batch is chosen, those of one. */
+export function countedBatches({ batchIds, referenceIds }: Draft): TakenBatches {
+  return { batchIds: batchIds.length > 0 ? batchIds : [''], referenceIds }
+}
+
 /** Jars and grams of each chosen batch. */
 export function needsOf(offer: Offer, draft: Draft) {
   const all = planOf(offer, draft)
@@ -134,11 +139,7 @@ export function placesOf(offer: Offer, draft: Draft) {
   const plan = adjustedPlan(protocol.plan, draft.adjustments)
   const started = startedPositions(protocol.plan, draft.adjustments)
   const chosen = stationsOf(offer, draft, protocol, plan)
-  // Before a batch is chosen, the places of one are told.
-  const taken: TakenBatches = {
-    batchIds: draft.batchIds.length > 0 ? draft.batchIds : [''],
-    referenceIds: draft.referenceIds,
-  }
+  const taken = countedBatches(draft)
   const { leavings } = offer
   const { today, calendar } = offer.lab
   return protocol.plan.stations.map((asked, protocolPosition) => {

@@ -27,17 +27,17 @@ import { Savings } from './savings'
 import { StationChoices } from './station-choices'
 import {
   bodyOf,
+  countedBatches,
+  type Draft,
   emptyDraft,
+  type Need,
   needsOf,
+  type Offer,
   placesOf,
   planOf,
   savingsFor,
-  takenBatches,
-  whyNot,
-  type Draft,
-  type Need,
-  type Offer,
   type StartPlace,
+  whyNot,
 } from './start-state'
 
 type Props = { offer: Offer; batchCode: string | null; protocolCode: string | null }
@@ -159,9 +159,7 @@ export function StartStudyForm({ offer, batchCode, protocolCode }: Props) {
             </div>
           </Section>
           {plan ? <StationChoices {...{ offer, draft, set, fields }} endWeeks={plan.endWeeks} /> : null}
-          {plan ? (
-            <StartCalendar plan={plan} batchCount={takenBatches(draft).length} lab={offer.lab} />
-          ) : null}
+          {plan ? <StartCalendar plan={plan} taken={countedBatches(draft)} lab={offer.lab} /> : null}
         </div>
         <div className="grid content-start gap-8">
           {needs.map((need) => (

@@ -104,14 +104,19 @@ describe('a study that does not fit', () => {
     expect(() => refuseInPart(plan, { leaveOutStations: [9] }, 'x')).toThrow(/no such station/)
     expect(() => refuseInPart(plan, part, 'No room.')).not.toThrow()
     const voice = plan.stations[at]!.voice
-    expect(notStarted(plan, part, [offer('oven', 45, 3)], 1)).toEqual([
+    expect(notStarted(plan, part, [offer('oven', 45, 3)], of(1))).toEqual([
       {
         position: at,
         sentence: `45 °C was planned by the protocol, where it ${voice}, and was not started: oven had three free places and eleven were needed.`,
       },
     ])
-    expect(notStarted(plan, part, [offer('oven', 45, 30)], 1)[0]!.sentence).toMatch(/: by choice\.$/)
-    expect(notStarted(plan, part, [], 1)[0]!.sentence).toMatch(/: no station of the lab keeps it\.$/)
+    expect(notStarted(plan, part, [offer('oven', 45, 30)], of(1))[0]!.sentence).toMatch(/: by choice\.$/)
+    expect(notStarted(plan, part, [], of(1))[0]!.sentence).toMatch(/: no station of the lab keeps it\.$/)
+    // By hand: a watch jar and a spare of each batch, a jar of each at the first and the last time, of one at the 7 between.
+    const byTurns = { ...plan, batchMatrixing: 'half' as const }
+    const [turns] = notStarted(byTurns, part, [offer('oven', 45, 14)], of(2))
+    expect(turns!.sentence).toMatch(/oven had 14 free places and 15 were needed\.$/)
+    expect(notStarted(byTurns, part, [offer('oven', 45, 15)], of(2))[0]!.sentence).toMatch(/: by choice\.$/)
     expect(adjustedPlan(plan, part).stations).toHaveLength(plan.stations.length - 1)
     // A choice for a station behind the one left out keeps its meaning.
     expect(

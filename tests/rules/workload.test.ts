@@ -30,6 +30,11 @@ const due = (day: string, jars: number, more: Partial<DueJars> = {}): DueJars =>
   ...more,
 })
 
+const batches = (count: number) => ({
+  batchIds: Array.from({ length: count }, (_, index) => String(index)),
+  referenceIds: [],
+})
+
 describe('jars by week', () => {
   const load = workloadOf(
     [
@@ -77,7 +82,7 @@ describe('jars by week', () => {
 describe('before and after a study', () => {
   it('counts what its plan will ask, on the days on which it is laid', () => {
     const plan = readyMadePlan('screen', 'cream')
-    const own = dueOfPlan(plan, 2, '2027-02-27', calendar)
+    const own = dueOfPlan(plan, batches(2), '2027-02-27', calendar)
     // By hand: 4 stations with 9 time points and 1 with 5, a watch and a measuring jar each, two batches.
     expect(own.reduce((sum, one) => sum + one.jars, 0)).toBe((4 * 9 + 5) * 2 * 2)
     // Begun on a Saturday: week 1 is Saturday 6 March, its window of a day holds Friday.
@@ -87,6 +92,20 @@ describe('before and after a study', () => {
     const after = workloadOf([due('2027-03-10', 21), ...own], calendar, today)
     expect(fullestChanged(before, after)).toEqual({ monday: '2027-03-08', jars: 41, instead: 21 })
     expect(fullestChanged(before, before)).toBeNull()
+  })
+
+  it('counts a batch that takes turns only where it is measured', () => {
+    const plan = { ...readyMadePlan('screen', 'cream'), batchMatrixing: 'half' as const }
+    const all = dueOfPlan(plan, batches(2), today, calendar)
+    // By hand: of 9 time points at 4 stations the first and the last measure both batches, the 7 between one of the
+    // two; the 5 cycles both. Sealed jars are looked at every time: (4 × 9 + 5) × 2.
+    const count = (asks: string) =>
+      all.filter((one) => one.asks === asks).reduce((sum, one) => sum + one.jars, 0)
+    expect(count('measuring')).toBe(4 * (2 * 2 + 7) + 5 * 2)
+    expect(count('watch')).toBe((4 * 9 + 5) * 2)
+    // A reference beside them is measured every time.
+    const beside = dueOfPlan(plan, { ...batches(2), referenceIds: ['r'] }, today, calendar)
+    expect(beside.length - all.length).toBe(2 * (4 * 9 + 5))
   })
 
   it('names the fullest week as a person says it', () => {

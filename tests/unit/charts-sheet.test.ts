@@ -4,7 +4,7 @@ import { nextPlace } from '@/components/charts/sheet-grid'
 import { glyphHeight, jarShift, sheetLayout } from '@/components/charts/sheet-layout'
 import type { SheetCell, SheetRow } from '@/components/charts/sheet-layout'
 import { cellName } from '@/components/charts/sheet-names'
-import { dayAfter, dayName, rulerDates, timeScale } from '@/components/charts/time-scale'
+import { dayAfter, dayName, rulerDates, tagMiddle, timeScale } from '@/components/charts/time-scale'
 
 const cell = (weeks: number, more: Partial<SheetCell> = {}): SheetCell => ({
   weeks,
@@ -49,7 +49,8 @@ describe('time ruler', () => {
   })
 
   it('writes the year where it changes and keeps clear of today', () => {
-    const dates = rulerDates([0, 4, 8, 12, 16, 20, 26], '2026-09-08', timeScale(196, 1340, 26), 12)
+    const scale = timeScale(196, 1340, 26)
+    const dates = rulerDates([0, 4, 8, 12, 16, 20, 26], '2026-09-08', scale, scale.x(12))
     expect(dates.map(({ text }) => text)).toEqual([
       '8 Sep',
       '6 Oct',
@@ -58,6 +59,15 @@ describe('time ruler', () => {
       '26 Jan 2027',
       '9 Mar',
     ])
+  })
+})
+
+describe("today's tag", () => {
+  it('stands over its day, and on the first and the last day beside it, so that nothing covers its word', () => {
+    // The stations cover 168 of the sheet's width, and the study begins at 196.
+    expect(tagMiddle(196, 168, 1360)).toBe(216)
+    expect(tagMiddle(700, 168, 1360)).toBe(700)
+    expect(tagMiddle(1340, 168, 1360)).toBe(1312)
   })
 })
 

@@ -113,7 +113,7 @@ export async function startStudy(
     trx,
     actor,
     input.id,
-    notStarted(version.plan, input.adjustments, lab, batches.length).map((one) => ({
+    notStarted(version.plan, input.adjustments, lab, taken).map((one) => ({
       ...one,
       planned: version.plan.stations[one.position]!,
     })),

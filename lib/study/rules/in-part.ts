@@ -1,7 +1,8 @@
-import { jarsAtStation, stationName } from '@/lib/protocol/rules/plan'
+import { stationName } from '@/lib/protocol/rules/plan'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
 import { refuse } from '@/lib/http/errors'
 import type { StudyAdjustments } from '@/lib/study/schema'
+import { placesAt, plansOfBatches, type TakenBatches } from './jars'
 import { startedPositions } from './plan'
 import { fittingStations, freeIn, roomiest, type StationOffer } from './stations'
 import { capital, counted, numberWord } from './words'
@@ -35,13 +36,14 @@ export function notStarted(
   plan: ProtocolPlan,
   adjustments: StudyAdjustments,
   stations: StationOffer[],
-  batchCount: number,
+  { batchIds, referenceIds }: TakenBatches,
 ): NotStarted[] {
+  const plans = plansOfBatches(plan, batchIds, referenceIds)
   return [...new Set(adjustments.leaveOutStations ?? [])]
     .toSorted((a, b) => a - b)
     .map((position) => {
       const planned = plan.stations[position]!
-      const needed = jarsAtStation(plan, planned) * batchCount
+      const needed = placesAt(plans, position)
       const station = roomiest(fittingStations(planned, stations))
       const cause =
         station === null

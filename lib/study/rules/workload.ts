@@ -1,6 +1,6 @@
 import type { ProtocolPlan } from '@/lib/protocol/schema'
 import { addDays, spokenDay } from './calendar'
-import { plannedJars } from './jars'
+import { plannedJars, type TakenBatches } from './jars'
 import { pullsOf } from './pulls'
 import { counted, numberWord } from './words'
 import { mondayOf, whyClosed, type LabCalendar } from './working-days'
@@ -69,10 +69,10 @@ function holidaysIn(monday: string, calendar: LabCalendar): { day: string; name:
   )
 }
 
-/** What a study that starts on this day will ask of the lab, day by day. */
+/** What a study that starts on this day will ask of the lab, day by day: of a batch that takes turns only in its own. */
 export function dueOfPlan(
   plan: ProtocolPlan,
-  batchCount: number,
+  { batchIds, referenceIds }: TakenBatches,
   startedOn: string,
   calendar: LabCalendar,
 ): DueJars[] {
@@ -82,15 +82,14 @@ export function dueOfPlan(
         pullsOf(station, startedOn, plan.endWeeks, calendar).map((pull) => [pull.timeWeeks, pull.dueOn]),
       ),
   )
-  // Batches of a study are alike, so one is counted and multiplied.
-  return plannedJars(plan, ['one']).flatMap(({ position, kind, weeks }) =>
+  return plannedJars(plan, batchIds, referenceIds).flatMap(({ position, kind, weeks }) =>
     position === null
       ? []
       : weeks.map((week) => ({
           day: days[position]!.get(week)!,
           kind: plan.stations[position]!.kind,
           asks: kind === 'watch' ? ('watch' as const) : ('measuring' as const),
-          jars: batchCount,
+          jars: 1,
         })),
   )
 }
