@@ -186,7 +186,8 @@ test('A family of six variants goes from one base to labelled jars in under ten 
       ['0.2', '0.3', '0.4'][Math.floor(index / 2)]!,
       ['0.5', '0.9'][index % 2]!,
     )
-    if (index > 0) await hand.press(page.getByRole('link', { name: 'Batches', exact: true }))
+    if (index > 0)
+      await hand.press(page.getByRole('navigation').getByRole('link', { name: 'Batches', exact: true }))
     await hand.press(page.getByRole('link', { name: `${variant.code}-1`, exact: true }))
     const making = { sizeG: 2000, yieldG: 1950, typeShown: 'water-in-oil', conductivity: '0.2' }
     batches.push(await keepBatch(page, hand, variant, making))

@@ -136,14 +136,11 @@ export async function startIt(page: Page, hand: Hand, title: string) {
   await expect(page).toHaveURL(/\/studies\/S-\d+\/jars$/)
 }
 
-/** The codes on the sheets of labels, as they leave the printer. */
+/** What the squares on the sheets of labels say, as they leave the printer. */
 export async function printLabels(page: Page, hand: Hand): Promise<string[]> {
   await hand.press(page.getByRole('link', { name: 'Print the labels' }))
   await expect(page.getByRole('heading', { level: 1 })).toHaveText(/^\d+\slabels on /)
-  const sheets = page.getByRole('img', { name: /^Sheet \d+: / })
-  await expect(sheets.first()).toBeVisible()
-  const names = await sheets.evaluateAll((drawn) =>
-    drawn.map((sheet) => sheet.getAttribute('aria-label') ?? ''),
-  )
-  return names.flatMap((name) => name.match(/\b[0-9A-Z]{5}\b/g) ?? [])
+  const squares = page.getByRole('img', { name: /^Square of jar [0-9A-Z]{5}$/ })
+  await expect(squares.first()).toBeVisible()
+  return squares.evaluateAll((drawn) => drawn.map((one) => one.getAttribute('aria-label') ?? ''))
 }
