@@ -2,6 +2,9 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { POST as logRoute } from '@/app/api/pulls/[id]/readings/route'
 import { POST as cancelRoute } from '@/app/api/stations/[id]/downtimes/[downtimeId]/cancel/route'
 import { POST as downtimeRoute } from '@/app/api/stations/[id]/downtimes/route'
+import { GET as allReadingsRoute } from '@/app/api/readings/route'
+import { GET as readingsRoute } from '@/app/api/studies/[code]/readings/route'
+import { GET as fileRoute } from '@/app/api/studies/[code]/readings/export/route'
 import { POST as moveRoute } from '@/app/api/stations/[id]/moves/route'
 import { PUT as changeRoute } from '@/app/api/stations/[id]/route'
 import { GET as sheetRoute } from '@/app/api/studies/[code]/sheet/route'
@@ -218,9 +221,9 @@ describe('moving jars', () => {
       await station('Warm B', 45, 20),
       await station('Cool C', 40, 20),
     ]
-    await study(a)
+    const code = await study(a)
     const jars = (await at(a)).filter((jar) => jar.kind === 'measuring')
-    const [first, second] = jars as [(typeof jars)[0], (typeof jars)[0]]
+    const [first, second, third] = jars as [(typeof jars)[0], (typeof jars)[0], (typeof jars)[0]]
     expect((await move(a, same, [first.id])).status).toBe(200)
     const away = await move(a, cool, [second.id])
     expect(away.body.effects).toMatchObject([{ isElsewhere: true, follows: false }])
@@ -249,6 +252,32 @@ describe('moving jars', () => {
     expect((await doubtsOf(first.id)).map((one) => one.reason)).not.toContain('place')
     const found = (await doubtsOf(second.id)).find((one) => one.reason === 'place')
     expect(found!.sentence).toMatch(/^The jar stood at 40 °C instead of 45 °C from .* on\./)
+
+    // Readings name the station where their jar stood, not the one where its series began.
+    await doubtsOf(third.id)
+    const stood = [
+      [first.code, 'Warm B'],
+      [second.code, 'Cool C'],
+      [third.code, 'Warm A'],
+    ] as const
+    const { body } = await call(readingsRoute, { cookie: technician.cookie, params: { code } })
+    const named = body.rows.map(({ current }: { current: { jarCode: string; stationName: string } }) => [
+      current.jarCode,
+      current.stationName,
+    ])
+    for (const one of stood) expect(named).toContainEqual(one)
+    const there = await call(readingsRoute, {
+      cookie: technician.cookie,
+      params: { code },
+      query: { station: 'Cool C' },
+    })
+    expect(there.body.rows).toHaveLength(1)
+    const all = await call(allReadingsRoute, { cookie: technician.cookie, query: { study: code } })
+    const entries = all.body as { jarCode: string; stationName: string }[]
+    expect(entries.find((one) => one.jarCode === second.code)!.stationName).toBe('Cool C')
+    const query = { columns: 'jar,station' }
+    const file = await call(fileRoute, { cookie: technician.cookie, params: { code }, query })
+    expect(file.body).toMatch(new RegExp(`${second.code}.*Cool C`))
   })
 
   it('the temperature record of the series goes from one station into the other', async () => {

@@ -5,6 +5,7 @@ import { listChoices } from '@/lib/list/queries/choices'
 import { pageOf } from '@/lib/list/queries/page'
 import { all, likeTyped, naturally, onDays, type Source } from '@/lib/list/queries/source'
 import type { ListQuery } from '@/lib/list/schema'
+import { stationWhenRead } from '@/lib/station/queries/stood'
 import type { FlagLevel } from '../rules/wanted'
 
 type Query = ListQuery<'state' | 'study' | 'level' | 'station' | 'from' | 'to'>
@@ -21,7 +22,8 @@ export type FlagCounts = FlagsPage['counts']
 
 const from = sql`flag join study on study.id = flag.study_id join batch on batch.id = flag.batch_id
   left join study_station on study_station.id = flag.study_station_id
-  left join station on station.id = study_station.station_id`
+  left join reading on reading.id = flag.reading_id
+  left join station on station.id = ${stationWhenRead('reading', 'studyStation')}`
 
 export function flagSource(db: Db, _actor: Actor, query: Query): Source<FlagLine> {
   return {
@@ -96,9 +98,9 @@ async function flagRows(db: Db, numbers: string[]) {
     .innerJoin('study', 'study.id', 'flag.studyId')
     .innerJoin('batch', 'batch.id', 'flag.batchId')
     .leftJoin('studyStation as ss', 'ss.id', 'flag.studyStationId')
-    .leftJoin('station', 'station.id', 'ss.stationId')
     .leftJoin('instrument', 'instrument.id', 'flag.instrumentId')
     .leftJoin('reading', 'reading.id', 'flag.readingId')
+    .leftJoin('station', (join) => join.on('station.id', '=', stationWhenRead('reading', 'ss')))
     .leftJoin('jar', 'jar.id', 'reading.jarId')
     .innerJoin('person as raiser', 'raiser.id', 'flag.raisedBy')
     .leftJoin('person as answerer', 'answerer.id', 'flag.answeredBy')

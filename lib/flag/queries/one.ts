@@ -6,6 +6,7 @@ import { namedJar } from '@/lib/jar/rules'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
 import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
 import type { SeriesFinding } from '@/lib/science/series'
+import { stationWhenRead } from '@/lib/station/queries/stood'
 import { dayIn } from '@/lib/study/rules/calendar'
 import { needsQuality } from '../rules/closing'
 import { againstTrend } from '../rules/against-trend'
@@ -23,8 +24,8 @@ export async function findFlag(db: Db | Trx, number: number) {
     .innerJoin('formulaVersion as fv', 'fv.id', 'batch.formulaVersionId')
     .innerJoin('formula', 'formula.id', 'fv.formulaId')
     .leftJoin('studyStation as ss', 'ss.id', 'flag.studyStationId')
-    .leftJoin('station', 'station.id', 'ss.stationId')
     .leftJoin('reading as r', 'r.id', 'flag.readingId')
+    .leftJoin('station', (join) => join.on('station.id', '=', stationWhenRead('r', 'ss')))
     .leftJoin('jar', 'jar.id', 'r.jarId')
     .leftJoin('pullJar as pj', 'pj.id', 'r.pullJarId')
     .leftJoin('pull', 'pull.id', 'pj.pullId')
@@ -152,7 +153,7 @@ function readingsWithTrend(db: Db) {
     .innerJoin('study', 'study.id', 'r.studyId')
     .innerJoin('batch', 'batch.id', 'r.batchId')
     .innerJoin('studyStation as ss', 'ss.id', 'r.studyStationId')
-    .innerJoin('station', 'station.id', 'ss.stationId')
+    .innerJoin('station', (join) => join.on('station.id', '=', stationWhenRead('r', 'ss')))
     .leftJoin('jar', 'jar.id', 'r.jarId')
     .leftJoin('series', (join) =>
       join

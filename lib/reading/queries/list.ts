@@ -1,6 +1,7 @@
 import type { Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
+import { stationWhenRead } from '@/lib/station/queries/stood'
 import { studiesOf } from '@/lib/study/queries/scope'
 import type { EntryDoubt } from '@/lib/series/queries/frame'
 
@@ -20,7 +21,7 @@ export async function listReadings(db: Db, actor: Actor, studyCode: string, attr
     .innerJoin('batch', 'batch.id', 'r.batchId')
     .innerJoin('person', 'person.id', 'r.recordedBy')
     .leftJoin('studyStation as ss', 'ss.id', 'r.studyStationId')
-    .leftJoin('station', 'station.id', 'ss.stationId')
+    .leftJoin('station', (join) => join.on('station.id', '=', stationWhenRead('r', 'ss')))
     .leftJoin('jar', 'jar.id', 'r.jarId')
     .leftJoin('pullJar as pj', 'pj.id', 'r.pullJarId')
     .leftJoin('pull', 'pull.id', 'pj.pullId')

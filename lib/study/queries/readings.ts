@@ -6,6 +6,7 @@ import { pageOf } from '@/lib/list/queries/page'
 import { likeTyped, naturally, onDays, type Source } from '@/lib/list/queries/source'
 import type { ListQuery } from '@/lib/list/schema'
 import { attributes } from '@/lib/reading/schema/attributes'
+import { stationWhenRead } from '@/lib/station/queries/stood'
 import { attributeName } from '@/lib/study/rules/finding'
 import { getStudyHead, listStudyBatches } from './head'
 import { headOf } from './sheet'
@@ -41,7 +42,7 @@ export function readingSource(db: Db, studyId: string, { q, filters }: Query): S
   return {
     from: sql`reading join person on person.id = reading.recorded_by join batch on batch.id = reading.batch_id
       left join study_station on study_station.id = reading.study_station_id
-      left join station on station.id = study_station.station_id
+      left join station on station.id = ${stationWhenRead('reading', 'studyStation')}
       left join pull_jar on pull_jar.id = reading.pull_jar_id left join pull on pull.id = pull_jar.pull_id
       left join jar on jar.id = reading.jar_id left join instrument on instrument.id = reading.instrument_id`,
     where: [
@@ -101,7 +102,7 @@ async function entriesOf(db: Db, ids: string[]) {
     .innerJoin('person', 'person.id', 'reading.recordedBy')
     .innerJoin('batch', 'batch.id', 'reading.batchId')
     .leftJoin('studyStation', 'studyStation.id', 'reading.studyStationId')
-    .leftJoin('station', 'station.id', 'studyStation.stationId')
+    .leftJoin('station', (join) => join.on('station.id', '=', stationWhenRead('reading', 'studyStation')))
     .leftJoin('pullJar', 'pullJar.id', 'reading.pullJarId')
     .leftJoin('pull', 'pull.id', 'pullJar.pullId')
     .leftJoin('jar', 'jar.id', 'reading.jarId')
