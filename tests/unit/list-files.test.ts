@@ -99,6 +99,12 @@ describe('XLSX', () => {
     ])
   })
 
+  it('carries one day in every file, so that the same rows make the same bytes whenever they are written', async () => {
+    const bytes = await bytesOf(xlsxOf(of([['a']]), [10]))
+    // APPNOTE 4.4.6 [memory]: time and date of a local header at 10 and 12; 1 January 1980 is month 1 and day 1.
+    expect([bytes.readUInt16LE(10), bytes.readUInt16LE(12)]).toEqual([0, (1 << 5) | 1])
+  })
+
   it('holds more rows than one block, and more columns than the alphabet', async () => {
     const wide = Array.from({ length: 30 }, (_, i) => `column ${i}`)
     const rows = Array.from({ length: 3000 }, (_, i) => wide.map((_, at) => i * 100 + at))

@@ -13,7 +13,8 @@ export async function* zipOf(
     ready.push(bytes)
   })
   for await (const { name, parts } of files) {
-    const file = new ZipDeflate(name, { mtime })
+    const file = new ZipDeflate(name)
+    file.mtime = mtime
     zip.add(file)
     for await (const part of chunked(parts)) {
       file.push(Buffer.from(part))
