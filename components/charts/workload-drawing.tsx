@@ -110,6 +110,8 @@ function Standing({ column, shelf, isCompared }: { column: Column; shelf: number
   const { x, width, low, high, jars, isNamed } = column
   if (jars === 0) return null
   const lid = shelf - low - high
+  // Years of weeks on a phone leave a column about a pixel: its line then takes no more than the column has.
+  const line = Math.min(1.5, width / 2)
   return (
     <g>
       {low > 0 ? (
@@ -123,13 +125,13 @@ function Standing({ column, shelf, isCompared }: { column: Column; shelf: number
       ) : null}
       {high > 0 ? (
         <rect
-          x={x + 0.75}
-          y={lid + 0.75}
-          width={width - 1.5}
-          height={Math.max(0.5, high - 0.75)}
+          x={x + line / 2}
+          y={lid + line / 2}
+          width={width - line}
+          height={Math.max(0.5, high - line / 2)}
           fill={isCompared ? 'var(--ink)' : 'var(--ground)'}
           stroke="var(--ink)"
-          strokeWidth={1.5}
+          strokeWidth={line}
         />
       ) : null}
       <path

@@ -13,11 +13,11 @@ import { StationLabel } from '@/components/ui/station-label'
 import { heatLine } from '@/components/marks/heat'
 import type { ListQuery } from '@/lib/list/schema'
 import type { StationRow, StationsPage } from '@/lib/station/queries/stations'
+import { stationsFinding } from '@/lib/station/rules/finding'
 import { lightText } from '@/lib/station/rules/keeps'
 import { stationList } from '@/lib/station/rules/list'
 import { sideOf } from '@/lib/science/temperature-log'
 import { dayIn, spokenDay } from '@/lib/study/rules/calendar'
-import { capital, numberWord } from '@/lib/study/rules/words'
 import { StationDialog } from './station-dialog'
 import { TemperatureDialog } from './temperature-dialog'
 
@@ -36,9 +36,7 @@ export function StationList({ stations, page, query, mayWrite, mayLog, timeZone 
   const router = useRouter()
   const [isAdding, setIsAdding] = useState(false)
   const [logged, setLogged] = useState<StationRow | null>(null)
-  const outside = stations.filter(
-    (station) => station.lastC !== null && sideOf(station, station.lastC) !== null,
-  )
+  const finding = stationsFinding(stations)
   const add = mayWrite ? (
     <Button kind="primary" onClick={() => setIsAdding(true)}>
       Add a station
@@ -49,27 +47,12 @@ export function StationList({ stations, page, query, mayWrite, mayLog, timeZone 
       <Heading
         crumb="Stations, in the order of the walk"
         headline={
-          stations.length === 0 ? (
-            'No station is here yet'
-          ) : outside.length === 0 ? (
-            <>
-              <b>Every station</b> was inside its limits when last read
-            </>
-          ) : (
-            <>
-              <b>
-                {capital(numberWord(outside.length))} of {stations.length}
-              </b>{' '}
-              {outside.length === 1 ? 'station is' : 'stations are'} outside{' '}
-              {outside.length === 1 ? 'its' : 'their'} limits
-            </>
-          )
+          <>
+            {finding.strong ? <b>{finding.strong}</b> : null}
+            {finding.rest}
+          </>
         }
-        sentence={
-          outside.length > 0
-            ? `${outside.map((one) => one.name).join(', ')}: look at the record, then at the jars.`
-            : undefined
-        }
+        sentence={finding.sentence ?? undefined}
         acts={stations.length > 0 ? add : undefined}
       />
       {stations.length === 0 ? (
