@@ -10,7 +10,7 @@ import type { BatchPage } from '@/lib/batch/queries/get-batch'
 import { currentReadings, isTorqueJar, torqueEvery } from '@/lib/batch/rules/readings'
 import { gramsText } from '@/lib/batch/rules/weighing'
 import { newId } from '@/lib/db/id'
-import { readDecimal } from '@/lib/number/rules'
+import { readDecimal, readTyped } from '@/lib/number/rules'
 import { netGrams } from '@/lib/science/making'
 import { dayAndHour } from './balance-choice'
 import { useEntry } from './use-entry'
@@ -113,14 +113,18 @@ function FillForm({
         }
       : { number: String(next), tare: '', gross: '', torque: '', reason: '' },
   )
-  const value = (text: string) => (text.trim() ? (readDecimal(text) ?? text) : null)
   const number = readDecimal(typed.number) ?? next
 
   async function save(event: FormEvent) {
     event.preventDefault()
     const body = {
-      ...{ id, number: value(typed.number), tareG: value(typed.tare), grossG: value(typed.gross) },
-      ...{ torqueNm: value(typed.torque), supersedes: corrected?.id ?? null, reason: typed.reason },
+      ...{
+        id,
+        number: readTyped(typed.number),
+        tareG: readTyped(typed.tare),
+        grossG: readTyped(typed.gross),
+      },
+      ...{ torqueNm: readTyped(typed.torque), supersedes: corrected?.id ?? null, reason: typed.reason },
     }
     if (!(await keep({ id, kind: 'fills', name: `Jar ${typed.number}`, body }))) return
     forget()

@@ -8,7 +8,7 @@ import { NumberField } from '@/components/ui/number-field'
 import { Section } from '@/components/ui/section'
 import { gramsText } from '@/lib/batch/rules/weighing'
 import type { BatchPage } from '@/lib/batch/queries/get-batch'
-import { readDecimal } from '@/lib/number/rules'
+import { readTyped } from '@/lib/number/rules'
 import { totalGrams } from '@/lib/science/making'
 import { useAct } from './use-act'
 
@@ -20,7 +20,6 @@ export function FinishForm({ batch, onSaved }: Props) {
   const [typed, setTyped] = useState({ yield: '', fill: '', closure: '' })
   const set = (change: Partial<typeof typed>) => setTyped((now) => ({ ...now, ...change }))
   const weighedG = totalGrams(batch.weighings.map((line) => line.actualG ?? 0))
-  const value = (text: string) => (text.trim() ? (readDecimal(text) ?? text) : null)
   const toWeigh = batch.weighings.filter((line) => line.actualG === null).length
   const toDo = batch.steps.filter((step) => !step.doneAt).length
   const why =
@@ -35,7 +34,12 @@ export function FinishForm({ batch, onSaved }: Props) {
         onSubmit={(event) => {
           event.preventDefault()
           const { version } = batch
-          void act({ version, yieldG: value(typed.yield), fillG: value(typed.fill), closure: typed.closure })
+          void act({
+            version,
+            yieldG: readTyped(typed.yield),
+            fillG: readTyped(typed.fill),
+            closure: typed.closure,
+          })
         }}
       >
         <NumberField

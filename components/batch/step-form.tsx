@@ -8,7 +8,7 @@ import { NumberField } from '@/components/ui/number-field'
 import type { BatchPage } from '@/lib/batch/queries/get-batch'
 import { deviations, stepTimes } from '@/lib/batch/rules/steps'
 import { newId } from '@/lib/db/id'
-import { readDecimal } from '@/lib/number/rules'
+import { readDecimal, readTyped } from '@/lib/number/rules'
 import { dayAndHour } from './balance-choice'
 import { useEntry } from './use-entry'
 import { useKeptDraft } from './use-kept-draft'
@@ -35,9 +35,9 @@ export function StepForm({ work, step, number, onDone }: Props) {
   // The presses measured it, so an empty field takes their minutes.
   const minutes = typed.minutes || (times.minutes === null ? '' : String(times.minutes))
   const values = {
-    actualSpeedRpm: valueOf(typed.speed),
-    actualMinutes: valueOf(minutes),
-    actualTemperatureC: valueOf(typed.temperature),
+    actualSpeedRpm: readTyped(typed.speed),
+    actualMinutes: readTyped(minutes),
+    actualTemperatureC: readTyped(typed.temperature),
   }
   const numbers = {
     actualSpeedRpm: readDecimal(typed.speed),
@@ -130,5 +130,3 @@ export function StepForm({ work, step, number, onDone }: Props) {
 }
 
 const textOf = (value: number | null) => (value === null ? '' : String(value))
-/** A text that is no number goes to the server as it is, which says so at its place. */
-const valueOf = (text: string) => (text.trim() ? (readDecimal(text) ?? text) : null)

@@ -1,5 +1,5 @@
 import { moneyText, percentText } from '@/lib/formula/rules/numbers'
-import { readDecimal, readScaled } from '@/lib/number/rules'
+import { readDecimal, readScaled, readTyped } from '@/lib/number/rules'
 import type { BookRow } from '@/lib/ingredient/queries'
 import { fromMemory } from '@/lib/ingredient/schema'
 
@@ -58,7 +58,6 @@ export function typeIngredient(row: Omit<BookRow, 'usedIn' | 'match'> | null): T
 
 /** As the server takes it; what cannot be read is sent as it is, and comes back with its sentence. */
 export function bodyOf(typed: TypedIngredient) {
-  const number = (text: string) => (text.trim() ? (readDecimal(text) ?? text) : null)
   const scaled = (text: string, places: number) => {
     if (!text.trim()) return null
     // A number with too many decimals is no whole one, and is refused for that.
@@ -76,12 +75,12 @@ export function bodyOf(typed: TypedIngredient) {
     percentLowThousandths: scaled(typed.percentLow, 3),
     percentHighThousandths: scaled(typed.percentHigh, 3),
     rangeSource: typed.rangeSource,
-    acidValue: number(typed.acidValue),
-    baseValue: number(typed.baseValue),
-    phLow: number(typed.phLow),
-    phHigh: number(typed.phHigh),
-    meltsAboveC: number(typed.meltsAboveC),
-    holdsInternalPercent: number(typed.holdsInternalPercent),
+    acidValue: readTyped(typed.acidValue),
+    baseValue: readTyped(typed.baseValue),
+    phLow: readTyped(typed.phLow),
+    phHigh: readTyped(typed.phHigh),
+    meltsAboveC: readTyped(typed.meltsAboveC),
+    holdsInternalPercent: readTyped(typed.holdsInternalPercent),
     figuresSource: typed.figuresSource,
     caution: typed.caution,
     note: typed.note,

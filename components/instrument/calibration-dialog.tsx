@@ -6,7 +6,7 @@ import { Dialog } from '@/components/ui/dialog'
 import { ErrorNote } from '@/components/ui/error-note'
 import { Field } from '@/components/ui/field'
 import { NumberField } from '@/components/ui/number-field'
-import { readDecimal } from '@/lib/number/rules'
+import { readTyped } from '@/lib/number/rules'
 import { toast } from '@/components/ui/toast'
 import { calibrationKeys } from '@/lib/calibration/schema'
 import { newId } from '@/lib/db/id'
@@ -139,7 +139,7 @@ function startOf(kind: string): Record<string, string> {
 }
 
 function checkOf(kind: string, texts: Record<string, string>) {
-  const number = (key: string) => readDecimal(texts[key] ?? '')
+  const number = (key: string) => readTyped(texts[key] ?? '')
   if (kind === 'meter') {
     return {
       kind,

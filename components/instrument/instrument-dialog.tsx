@@ -7,7 +7,7 @@ import { Dialog } from '@/components/ui/dialog'
 import { ErrorNote } from '@/components/ui/error-note'
 import { Field } from '@/components/ui/field'
 import { NumberField } from '@/components/ui/number-field'
-import { readDecimal } from '@/lib/number/rules'
+import { readTyped } from '@/lib/number/rules'
 import { Select } from '@/components/ui/select'
 import { toast } from '@/components/ui/toast'
 import { newId } from '@/lib/db/id'
@@ -43,7 +43,7 @@ export function InstrumentDialog({ instrument, onClose, onDone }: Props) {
         kind === 'viscometer'
           ? spindles
               .filter((one) => one.name.trim() !== '')
-              .map((one) => ({ name: one.name, constant: readDecimal(one.constant) }))
+              .map((one) => ({ name: one.name, constant: readTyped(one.constant) }))
           : [],
     }
     try {

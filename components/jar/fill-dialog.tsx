@@ -5,7 +5,7 @@ import { Button } from '@/components/ui/button'
 import { Dialog } from '@/components/ui/dialog'
 import { ErrorNote } from '@/components/ui/error-note'
 import { NumberField } from '@/components/ui/number-field'
-import { readDecimal } from '@/lib/number/rules'
+import { readTyped } from '@/lib/number/rules'
 import { toast } from '@/components/ui/toast'
 import { ClientError, send } from '@/lib/http/fetcher'
 import type { JarRow } from '@/lib/jar/queries'
@@ -34,9 +34,9 @@ export function FillDialog({
     try {
       await send(jarKeys.one(jar.code), 'PUT', {
         version: jar.version,
-        tareG: readDecimal(tare),
-        grossG: readDecimal(gross),
-        fillHeightMm: readDecimal(height),
+        tareG: readTyped(tare),
+        grossG: readTyped(gross),
+        fillHeightMm: readTyped(height),
       })
       toast(`${jar.code} is weighed`)
       onDone()

@@ -7,7 +7,7 @@ import { Dialog } from '@/components/ui/dialog'
 import { ErrorNote } from '@/components/ui/error-note'
 import { Field } from '@/components/ui/field'
 import { NumberField } from '@/components/ui/number-field'
-import { readDecimal } from '@/lib/number/rules'
+import { readTyped } from '@/lib/number/rules'
 import { Select } from '@/components/ui/select'
 import { toast } from '@/components/ui/toast'
 import { newId } from '@/lib/db/id'
@@ -49,7 +49,7 @@ export function StationDialog({ station, nextOrder, onClose, onDone }: Props) {
   async function save() {
     setBusy(true)
     setError(null)
-    const read = Object.fromEntries(numbers.map((key) => [key, readDecimal(texts[key])]))
+    const read = Object.fromEntries(numbers.map((key) => [key, readTyped(texts[key])]))
     const body = {
       ...read,
       ...(kind === 'freeze-thaw'
@@ -149,6 +149,7 @@ export function StationDialog({ station, nextOrder, onClose, onDone }: Props) {
         label="What to mind there"
         value={caution}
         onText={setCaution}
+        error={fields['caution']}
         hint="Shown at every pull: heat, cracked glass, eye protection. It points to the lab's own procedure."
       />
       {station ? (

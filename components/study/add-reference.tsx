@@ -6,7 +6,7 @@ import { Dialog } from '@/components/ui/dialog'
 import { ErrorNote } from '@/components/ui/error-note'
 import { Field } from '@/components/ui/field'
 import { NumberField } from '@/components/ui/number-field'
-import { readDecimal } from '@/lib/number/rules'
+import { readTyped } from '@/lib/number/rules'
 import { Select } from '@/components/ui/select'
 import { toast } from '@/components/ui/toast'
 import { newId } from '@/lib/db/id'
@@ -30,7 +30,7 @@ export function AddReference({ onAdded }: { onAdded: (id: string) => void }) {
     setBusy(true)
     setError(null)
     try {
-      const body = { id, name, lot, emulsionType, grams: readDecimal(grams) }
+      const body = { id, name, lot, emulsionType, grams: readTyped(grams) }
       const made = await send<{ code: string }>(referenceKeys.add, 'POST', body)
       toast(`${name.trim()} stands in the list as ${made.code}`)
       setIsOpen(false)

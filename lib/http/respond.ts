@@ -64,7 +64,8 @@ export function fromZod(error: ZodError): AppError {
   for (const issue of error.issues) fields[issue.path.map(String).join('.')] ??= issue.message
   const [first] = Object.entries(fields)
   const others = Object.keys(fields).length - 1
-  const where = first?.[0] ? `${first[0]}: ` : ''
+  // A form's own field shows its sentence where it was typed; a place further in has no such label.
+  const where = first?.[0].includes('.') ? `${first[0]}: ` : ''
   const more = others > 0 ? ` ${others} more like it.` : ''
   return refuse.invalid(`${where}${first?.[1] ?? 'This cannot be taken.'}${more}`, fields)
 }

@@ -13,8 +13,13 @@ function sentenceFor(issue: {
 }): string | undefined {
   const { code, input, minimum, maximum, origin } = issue
   if (code === 'invalid_type' && (input === undefined || input === null)) return 'Fill this in.'
+  if (code === 'invalid_type' && issue['expected'] === 'int') return 'Type a whole number.'
   if (code === 'invalid_type' && issue['expected'] === 'number') return 'Type a number here.'
   if (code === 'invalid_type') return 'This cannot be read here. Type it again.'
+  if (origin === 'int' && (code === 'too_small' || code === 'too_big'))
+    return code === 'too_small'
+      ? 'That is too small for a number here.'
+      : 'That is too large for a number here.'
   if (code === 'too_small') {
     if (origin === 'string')
       return Number(minimum) <= 1 ? 'Fill this in.' : `Use at least ${minimum} characters.`

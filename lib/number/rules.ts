@@ -10,6 +10,11 @@ export function readDecimal(typed: string): number | null {
   return Number(plain.replace(',', '.'))
 }
 
+/** What is typed as it is sent: the number in it, nothing where nothing stands; what cannot be read goes as it is and is refused by name. */
+export function readTyped(typed: string): number | string | null {
+  return typed.trim() === '' ? null : (readDecimal(typed) ?? typed)
+}
+
 /** Whole units of 10^-places, exact where the text has at most that many decimals, else null. */
 export function readScaled(typed: string, places: number): number | null {
   const value = readDecimal(typed)
