@@ -154,6 +154,7 @@ function cellsOn(today: string): Parameters<typeof ListLedger<InstrumentRow>>[0]
     },
     kind: { from: 'tablet' },
     result: {
+      from: 'tablet',
       cell: (row) => (
         <span className={row.result === 'doubtful' ? 'font-650 text-alarm' : ''}>
           {row.result ?? 'none yet'}
@@ -175,7 +176,7 @@ function Due({ row, today }: { row: InstrumentRow; today: string }) {
   const late = isOverdue({ dueOn: row.dueOn }, today)
   return (
     <span className={late ? 'font-650 text-alarm' : ''}>
-      {spokenDay(row.dueOn)}
+      <span className="whitespace-nowrap">{spokenDay(row.dueOn)}</span>
       {late ? ', overdue' : ''}
     </span>
   )
