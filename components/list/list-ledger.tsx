@@ -40,7 +40,7 @@ export function ListLedger<Row>(props: Props<Row>) {
         key: column.key,
         title: column.title,
         align: column.kind === 'number' ? ('right' as const) : ('left' as const),
-        cell: (row: Row) => plain(column, row, timeZone),
+        cell: (row: Row) => plain(column, row, timeZone, isChosen),
         ...cell,
         ...(isChosen || !from ? {} : { from }),
         ...(column.sort ? { sort: sortBy(list, path, query, column) } : {}),
@@ -54,8 +54,15 @@ export function ListLedger<Row>(props: Props<Row>) {
   )
 }
 
-function plain<Row>(column: Column<Row>, row: Row, timeZone: string): ReactNode {
+function plain<Row>(column: Column<Row>, row: Row, timeZone: string, isChosen: boolean): ReactNode {
   const value = column.value(row)
+  // Many chosen columns scroll sideways; a name among them then keeps the room of a few words to a line.
+  if (isChosen && typeof value === 'string' && (column.kind ?? 'text') === 'text')
+    return (
+      <span className="block" style={{ minWidth: `${Math.min(value.length, 24)}ch` }}>
+        {value}
+      </span>
+    )
   if (column.kind === undefined || column.kind === 'text' || value === null) return value
   const text = column.kind === 'number' ? value : spokenDay(dayOf(column.kind, String(value), timeZone))
   return <span className="whitespace-nowrap">{text}</span>
