@@ -101,7 +101,7 @@ export function MoveForm(props: Props) {
           error={fields['toStationId'] ?? (isShort ? shortOf(target, chosen.length) : undefined)}
           options={targets.map(({ station: one, keeps, hasRoom }) => ({
             value: one.id,
-            label: `${one.name}${one.temperatureC === null ? '' : `, ${degrees(one.temperatureC)}`}, ${counted(one.free, 'place')} free${hasRoom ? (keeps ? ', as asked' : ', other conditions') : ', not enough'}`,
+            label: `${one.name}${one.temperatureC === null ? '' : `, ${degrees(one.temperatureC)}`}, ${counted(one.free, 'place')} free${chosen.length === 0 ? '' : hasRoom ? (keeps ? ', as asked' : ', other conditions') : ', not enough'}`,
           }))}
           wrap="min-w-[260px] flex-1"
         />
@@ -127,7 +127,7 @@ export function MoveForm(props: Props) {
         </div>
       ) : null}
       <ErrorNote error={error} />
-      <div className="flex flex-wrap gap-3">
+      <div className="flex flex-wrap items-start gap-3">
         <Button
           kind="primary"
           busy={busy}
