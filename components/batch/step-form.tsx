@@ -21,7 +21,10 @@ type Props = {
   onDone: () => void
 }
 
-/** What was really done; the prescribed values stand as hints and are never filled in by themselves. */
+/**
+ * What was really done; the prescribed values stand as hints and are never filled in by themselves. Who did just that
+ * says so with one press, and the record says that it was one.
+ */
 export function StepForm({ work, step, number, onDone }: Props) {
   const { keep, isSending, fields, refusal } = useEntry(work)
   const [id] = useState(newId)
@@ -50,19 +53,34 @@ export function StepForm({ work, step, number, onDone }: Props) {
   const press = (kind: 'start' | 'end') =>
     keep({ id, kind: 'steps', name: `Step ${number}, ${kind}`, body: { ...base, kind } })
 
-  async function save(event: FormEvent) {
-    event.preventDefault()
-    if (otherwise.length && !typed.note.trim()) noteField.current?.focus()
-    const body = { ...base, kind: 'done', ...values, note: typed.note, reason: typed.reason }
+  async function save(done: typeof values, note: string) {
+    const body = { ...base, kind: 'done', ...done, note, reason: typed.reason }
     if (!(await keep({ id, kind: 'steps', name: `Step ${number}`, body }))) return
     forget()
     onDone()
   }
 
+  function submit(event: FormEvent) {
+    event.preventDefault()
+    if (otherwise.length && !typed.note.trim()) noteField.current?.focus()
+    void save(values, typed.note)
+  }
+
+  const prescribed = {
+    actualSpeedRpm: step.speedRpm,
+    actualMinutes: step.minutes,
+    actualTemperatureC: step.temperatureC,
+  }
+  const isUntouched =
+    !step.doneAt &&
+    times.startedAt === null &&
+    Object.values(values).every((value) => value === null) &&
+    Object.values(prescribed).some((value) => value !== null)
+
   const asked = (value: number | null, unit: string) =>
     value === null ? undefined : `asked: ${value} ${unit}`
   return (
-    <form onSubmit={(event) => void save(event)} noValidate className="grid grid-cols-2 gap-4 sm:grid-cols-3">
+    <form onSubmit={submit} noValidate className="grid grid-cols-2 gap-4 sm:grid-cols-3">
       {step.doneAt ? null : (
         <div className="col-span-full flex flex-wrap items-center gap-4">
           <Button busy={isSending} onClick={() => void press(isRunning ? 'end' : 'start')}>
@@ -119,10 +137,20 @@ export function StepForm({ work, step, number, onDone }: Props) {
       ) : null}
       <div className="col-span-full flex flex-col gap-3">
         <ErrorNote error={refusal} />
-        <div>
+        <div className="flex flex-wrap gap-3">
           <Button type="submit" kind="primary" busy={isSending}>
             {step.doneAt ? `Correct step ${number}` : `Step ${number} is done`}
           </Button>
+          {isUntouched ? (
+            <Button
+              busy={isSending}
+              onClick={() =>
+                void save(prescribed, typed.note.trim() || 'As prescribed, said with one press.')
+              }
+            >
+              Done as prescribed
+            </Button>
+          ) : null}
         </div>
       </div>
     </form>

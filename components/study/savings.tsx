@@ -43,7 +43,7 @@ export function Savings({ savings, adjustments, onChange }: Props) {
             </div>
             <Button
               aria-pressed={saving.isTaken}
-              aria-label={saving.isTaken ? `Put back: ${saving.act}` : `Save: ${saving.act}`}
+              aria-label={saving.isTaken ? `Put back: ${saving.act}` : `Use this: ${saving.act}`}
               onClick={() =>
                 onChange(
                   saving.isTaken
@@ -52,7 +52,7 @@ export function Savings({ savings, adjustments, onChange }: Props) {
                 )
               }
             >
-              {saving.isTaken ? 'Put back' : 'Save'}
+              {saving.isTaken ? 'Put back' : 'Use this'}
             </Button>
           </li>
         ))}
