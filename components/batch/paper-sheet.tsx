@@ -110,7 +110,7 @@ function Steps({ batch }: { batch: BatchPage }) {
 function Checks({ batch }: { batch: BatchPage }) {
   return (
     <Part title="Checks, yield, rest">
-      <div className="grid grid-cols-3 gap-x-6 gap-y-3 pt-1">
+      <div className="grid grid-cols-2 gap-x-6 gap-y-3 pt-1 sm:grid-cols-3 print:grid-cols-3">
         {[
           'Look while made',
           'Temperature at the end, °C',
@@ -220,7 +220,7 @@ function Table({ caption, heads, rows, widths, rights = [] }: TableProps) {
 
 function Blank({ label }: { label: string }) {
   return (
-    <div className="flex h-[11mm] flex-col justify-between border-b border-ink">
+    <div className="flex min-h-[12mm] flex-col justify-between border-b border-ink pb-[6mm]">
       <span className="text-13 text-soft print:text-[8.5pt]">{label}</span>
     </div>
   )

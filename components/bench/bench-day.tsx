@@ -128,6 +128,8 @@ function Station({ station, isOpen, kept, onPick, onOpen }: StationProps) {
           <span
             className={`shrink-0 pb-1 text-right text-17 ${leaning.length > 0 ? 'font-650 text-alarm' : 'text-soft'}`}
           >
+            {/* Two ovens may keep the same temperature; open, the name stands below. */}
+            {isOpen ? null : <span className="block font-430 text-soft">{station.name}</span>}
             {remark(station, open.length, leaning.length)}
           </span>
         </span>

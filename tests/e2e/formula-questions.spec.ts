@@ -28,7 +28,9 @@ test('ingredients: found by a synonym, changed, and the book says who did', asyn
   const dialog = page.getByRole('dialog')
   await dialog.getByLabel('to, % w/w').fill('0,1')
   await dialog.getByRole('button', { name: 'Keep the change' }).click()
-  await expect(dialog.getByText(/^The highest share is below the lowest/)).toBeVisible()
+  await expect(dialog.getByLabel('to, % w/w')).toHaveAccessibleDescription(
+    /The highest share is below the lowest/,
+  )
   await dialog.getByLabel('to, % w/w').fill('6,5')
   await dialog.getByRole('button', { name: 'Keep the change' }).click()
   await expect(dialog).toBeHidden()
