@@ -16,7 +16,7 @@ type Props = { bench: Bench; outbox: Outbox; onOpen: (code: string) => void }
 export function BenchDay({ bench, outbox, onOpen }: Props) {
   const first = bench.stations.find((s) => s.counts.due + s.counts.resting > 0)?.id ?? null
   const [picked, setPicked] = useState<string | null>(null)
-  const [isFinding, setFinding] = useState(false)
+  const [finding, setFinding] = useState<'scanning' | 'typing' | null>(null)
   const openId = picked ?? first
   const { total, done, missed } = bench.counts
   const left = total - done - missed
@@ -63,12 +63,27 @@ export function BenchDay({ bench, outbox, onOpen }: Props) {
           />
         ))}
       </ol>
-      <div className="sticky bottom-0 mt-3 bg-ground px-4 pb-3 pt-3 sm:px-5">
-        <button type="button" data-kind="primary" className="btn w-full" onClick={() => setFinding(true)}>
-          <ScanMark /> Scan or type a code
+      <div className="sticky bottom-0 mt-3 flex gap-3 bg-ground px-4 pb-3 pt-3 sm:px-5">
+        <button
+          type="button"
+          data-kind="primary"
+          className="btn min-w-0 flex-1"
+          onClick={() => setFinding('scanning')}
+        >
+          <ScanMark /> Scan a label
+        </button>
+        <button type="button" className="btn" onClick={() => setFinding('typing')}>
+          Type a code
         </button>
       </div>
-      {isFinding ? <FindJar bench={bench} onOpen={onOpen} onClose={() => setFinding(false)} /> : null}
+      {finding ? (
+        <FindJar
+          bench={bench}
+          isScanning={finding === 'scanning'}
+          onOpen={onOpen}
+          onClose={() => setFinding(null)}
+        />
+      ) : null}
     </div>
   )
 }

@@ -1,6 +1,6 @@
 'use client'
 
-import { useState, type FormEvent } from 'react'
+import { lazy, Suspense, useState, type FormEvent } from 'react'
 import { Button } from '@/components/ui/button'
 import { Dialog } from '@/components/ui/dialog'
 import { Field } from '@/components/ui/field'
@@ -9,17 +9,25 @@ import { benchKeys } from '@/lib/bench/schema'
 import { ClientError, fetcher } from '@/lib/http/fetcher'
 import { readJarCode } from '@/lib/jar/rules'
 
-type Props = { bench: Bench; onOpen: (code: string) => void; onClose: () => void }
+/** Camera and decoder come only to those who scan. */
+const LabelCamera = lazy(() => import('@/components/bench/label-camera'))
 
-/** A label is scanned with a reader that types, or its code is typed. A jar that is not asked for says so. */
-export function FindJar({ bench, onOpen, onClose }: Props) {
+type Props = {
+  bench: Bench
+  /** With the camera, or with the code alone. A reader that types serves both. */
+  isScanning: boolean
+  onOpen: (code: string) => void
+  onClose: () => void
+}
+
+/** A label is scanned with the camera or a reader that types, or its code is typed. A jar not asked for says so. */
+export function FindJar({ bench, isScanning, onOpen, onClose }: Props) {
   const [text, setText] = useState('')
   const [error, setError] = useState<string | undefined>()
   const [isBusy, setBusy] = useState(false)
 
-  async function find(event: FormEvent) {
-    event.preventDefault()
-    const code = readJarCode(text)
+  async function find(given: string) {
+    const code = readJarCode(given)
     if (!code) {
       setError('That is no jar’s code: five signs, the last one checks the others. Read the label again.')
       return
@@ -41,8 +49,25 @@ export function FindJar({ bench, onOpen, onClose }: Props) {
   }
 
   return (
-    <Dialog isOpen onClose={onClose} title="Which jar" density="bench">
-      <form onSubmit={find} className="flex flex-col gap-4">
+    <Dialog isOpen onClose={onClose} title={isScanning ? 'Scan a label' : 'Which jar'} density="bench">
+      {isScanning ? (
+        <Suspense fallback={<p role="status">The camera is starting.</p>}>
+          <LabelCamera
+            onRead={(read) => {
+              setText(readJarCode(read) ?? read.slice(0, 40))
+              setError(undefined)
+              if (!isBusy) void find(read)
+            }}
+          />
+        </Suspense>
+      ) : null}
+      <form
+        onSubmit={(event: FormEvent) => {
+          event.preventDefault()
+          void find(text)
+        }}
+        className="flex flex-col gap-4"
+      >
         <Field
           label="Code on the label"
           density="bench"
@@ -54,7 +79,7 @@ export function FindJar({ bench, onOpen, onClose }: Props) {
           error={error}
           hint="A label reader types it and presses Enter by itself."
           autoCapitalize="characters"
-          autoFocus
+          autoFocus={!isScanning}
           className="font-mono uppercase"
         />
         <Button type="submit" kind="primary" density="bench" busy={isBusy}>
