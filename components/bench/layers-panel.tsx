@@ -1,37 +1,29 @@
 'use client'
 
-import type { Draft, Slot } from '@/components/bench/draft'
+import type { Slot } from '@/components/bench/draft'
 import { JarRuler } from '@/components/bench/jar-ruler'
+import type { JarEntry } from '@/components/bench/use-jar-entry'
 import { FieldBand, HollowDot } from '@/components/bench/value-panel'
 import { layersFacts } from '@/components/bench/value-facts'
-import { bandText, type Verdict } from '@/components/bench/verdict'
+import { bandText } from '@/components/bench/verdict'
 import { FigureDetails } from '@/components/ui/figure-details'
 import { StandingMark } from '@/components/marks/standing-mark'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 import { readTyped } from '@/lib/reading/schema/typed'
 import { shortDay } from '@/lib/report/rules'
 
-type Props = {
-  jar: BenchJarPage
-  slots: Slot[]
-  draft: Draft
-  verdicts: { slot: Slot; verdict: Verdict }[]
-  at: string
-  onPick: (key: string) => void
-  onText: (key: string, text: string) => void
-}
-
 /** The jar drawn as it is measured: layers follow the numbers, and the numbers follow the handles. */
-export function LayersPanel({ jar, slots, draft, verdicts, at, onPick, onText }: Props) {
+export function LayersPanel({ jar, entry }: { jar: BenchJarPage; entry: JarEntry }) {
+  const { slots, draft, at } = entry
   const top = slots.find((s) => s.part === 'top')
   const bottom = slots.find((s) => s.part === 'bottom')
   if (!top || !bottom) return null
   const fill = jar.fillHeightMm
   const mm = (slot: Slot) => readTyped(draft.texts[slot.key] ?? '') ?? 0
-  const verdict = verdicts.find((v) => v.slot.key === top.key)?.verdict
+  const verdict = entry.tabs.find((tab) => tab.key === top.key)?.verdict
   const isOut = verdict?.state === 'value' && verdict.isOut
   const set = (slot: Slot, value: number) =>
-    onText(slot.key, (Math.round(Math.max(0, Math.min(fill, value)) * 10) / 10).toFixed(1))
+    entry.type(slot.key, (Math.round(Math.max(0, Math.min(fill, value)) * 10) / 10).toFixed(1))
   return (
     <div className="grid grid-cols-[128px_minmax(0,1fr)] items-center gap-x-4 gap-y-2 px-4 pt-3 [grid-template-areas:'jar_sep''top_top''low_low'] sm:grid-cols-[320px_minmax(0,1fr)] sm:px-7 sm:[grid-template-areas:'jar_top''jar_sep''jar_low']">
       <div className="[grid-area:jar]">
@@ -51,7 +43,7 @@ export function LayersPanel({ jar, slots, draft, verdicts, at, onPick, onText }:
           text={draft.texts[top.key] ?? ''}
           isHere={at === top.key}
           last={lastText(top, 'topMm')}
-          onPick={() => onPick(top.key)}
+          onPick={() => entry.goTo(top.key)}
           onStep={(by) => set(top, mm(top) + by)}
         />
       </div>
@@ -97,7 +89,7 @@ export function LayersPanel({ jar, slots, draft, verdicts, at, onPick, onText }:
           text={draft.texts[bottom.key] ?? ''}
           isHere={at === bottom.key}
           last={lastText(bottom, 'bottomMm')}
-          onPick={() => onPick(bottom.key)}
+          onPick={() => entry.goTo(bottom.key)}
           onStep={(by) => set(bottom, mm(bottom) + by)}
         />
       </div>

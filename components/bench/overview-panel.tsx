@@ -1,7 +1,7 @@
 'use client'
 
 import { useState } from 'react'
-import type { TabState } from '@/components/bench/slot-tabs'
+import type { JarEntry } from '@/components/bench/use-jar-entry'
 import { HollowDot } from '@/components/bench/value-panel'
 import { bandText, slotLabel } from '@/components/bench/verdict'
 import { BandBar } from '@/components/marks/band-bar'
@@ -13,16 +13,11 @@ import { send } from '@/lib/http/fetcher'
 import { pullKeys } from '@/lib/pull/schema'
 import { figure, shortDay } from '@/lib/report/rules'
 
-type Props = {
-  jar: BenchJarPage
-  tabs: TabState[]
-  at: string
-  onPick: (key: string) => void
-  onChange: () => void
-}
+type Props = { jar: BenchJarPage; entry: JarEntry; onChange: () => void }
 
 /** A measuring jar: every field with its band and its last three values; first it may rest. */
-export function OverviewPanel({ jar, tabs, at, onPick, onChange }: Props) {
+export function OverviewPanel({ jar, entry, onChange }: Props) {
+  const { tabs, at } = entry
   return (
     <div className="grid gap-x-6 gap-y-3 px-4 pt-3 sm:grid-cols-[140px_minmax(0,1fr)] sm:px-7">
       <div className="hidden sm:block">
@@ -42,7 +37,7 @@ export function OverviewPanel({ jar, tabs, at, onPick, onChange }: Props) {
             <li key={key} className="border-b border-hair">
               <button
                 type="button"
-                onClick={() => onPick(key)}
+                onClick={() => entry.goTo(key)}
                 aria-pressed={key === at}
                 className="grid min-h-16 w-full grid-cols-[minmax(0,1fr)_auto] items-center gap-x-4 py-2 text-left sm:grid-cols-[220px_150px_minmax(0,1fr)]"
               >

@@ -1,18 +1,10 @@
-import type { Slot } from '@/components/bench/draft'
+import type { JarEntry } from '@/components/bench/use-jar-entry'
 import { slotLabel, slotUnit, type Verdict } from '@/components/bench/verdict'
 
-export type TabState = { key: string; slot: Slot; verdict: Verdict; text: string }
-
-type Props = {
-  tabs: TabState[]
-  at: string
-  onPick: (key: string) => void
-  note: string
-  hasPhotos: boolean
-}
-
 /** The jar's fields in the order of the protocol; a check mark for what is in. */
-export function SlotTabs({ tabs, at, onPick, note, hasPhotos }: Props) {
+export function SlotTabs({ entry, hasPhotos }: { entry: JarEntry; hasPhotos: boolean }) {
+  const { tabs, at, goTo } = entry
+  const { note } = entry.draft
   const top = tabs.find((tab) => tab.slot.part === 'top')
   const bottom = tabs.find((tab) => tab.slot.part === 'bottom')
   return (
@@ -31,7 +23,7 @@ export function SlotTabs({ tabs, at, onPick, note, hasPhotos }: Props) {
           }
           isHere={at === top.key || at === bottom.key}
           mark={markOf(top.verdict)}
-          onPick={() => onPick(top.key)}
+          onPick={() => goTo(top.key)}
         />
       ) : null}
       {tabs
@@ -47,24 +39,18 @@ export function SlotTabs({ tabs, at, onPick, note, hasPhotos }: Props) {
             }
             isHere={tab.key === at}
             mark={markOf(tab.verdict)}
-            onPick={() => onPick(tab.key)}
+            onPick={() => goTo(tab.key)}
           />
         ))}
       {hasPhotos ? (
-        <Tab
-          label="Photo"
-          text="take one"
-          isHere={at === 'photo'}
-          mark={null}
-          onPick={() => onPick('photo')}
-        />
+        <Tab label="Photo" text="take one" isHere={at === 'photo'} mark={null} onPick={() => goTo('photo')} />
       ) : null}
       <Tab
         label="Note"
         text={note ? note.slice(0, 14) : 'none'}
         isHere={at === 'note'}
         mark={note ? 'in' : null}
-        onPick={() => onPick('note')}
+        onPick={() => goTo('note')}
       />
     </div>
   )

@@ -1,0 +1,85 @@
+'use client'
+
+import { useState } from 'react'
+import { DonePanel } from '@/components/bench/done-panel'
+import { FieldPanel } from '@/components/bench/field-panel'
+import { JarHead } from '@/components/bench/jar-head'
+import { JarNotices } from '@/components/bench/jar-notices'
+import { JarQuestions } from '@/components/bench/jar-questions'
+import type { JarScreenProps } from '@/components/bench/jar-screen'
+import { LayersPanel } from '@/components/bench/layers-panel'
+import { MissDialog } from '@/components/bench/miss-dialog'
+import { nextJar } from '@/components/bench/next-jar'
+import { OverviewPanel } from '@/components/bench/overview-panel'
+import { RestPanel } from '@/components/bench/rest-panel'
+import { SlotTabs } from '@/components/bench/slot-tabs'
+import { StationLine } from '@/components/bench/station-line'
+import { useJarEntry } from '@/components/bench/use-jar-entry'
+import { WalkStrip } from '@/components/bench/walk-strip'
+import { toast } from '@/components/ui/toast'
+import type { BenchJarPage } from '@/lib/bench/queries/jar'
+
+type Props = Omit<JarScreenProps, 'code'> & { jar: BenchJarPage }
+
+/** The jar that is in hand: its head, what it shows, its fields and the one being typed. */
+export function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }: Props) {
+  const [isMissing, setMissing] = useState(false)
+  const isDone = jar.state === 'done' || jar.state === 'missed'
+  const isResting = jar.state === 'resting' && !jar.isReady
+  const mayType = person.mayLog && !isDone && !isResting && !jar.isEarly && jar.isStudyRunning
+  const next = nextJar(bench, jar.code, outbox)
+  const entry = useJarEntry({ jar, person, outbox, mayType, onChange, onDone: goOn })
+
+  function goOn(sentence: string) {
+    toast(sentence)
+    onChange()
+    if (next) onOpen(next.code)
+    else onWalk()
+  }
+
+  return (
+    <div className="mx-auto flex min-h-dvh max-w-[1180px] flex-col">
+      <JarHead jar={jar} outbox={outbox} onWalk={onWalk} />
+      <WalkStrip bench={bench} code={jar.code} />
+      <StationLine jar={jar} onMiss={mayType ? () => setMissing(true) : null} />
+      <JarNotices
+        jar={jar}
+        kept={entry.kept}
+        isOthers={mayType && jar.openedBy?.personId !== person.personId}
+      />
+      {mayType || isResting ? null : (
+        <DonePanel
+          jar={jar}
+          mayLog={person.mayLog}
+          onChange={onChange}
+          onWalk={onWalk}
+          next={next}
+          onOpen={onOpen}
+        />
+      )}
+      {isResting ? <RestPanel jar={jar} onWalk={onWalk} onChange={onChange} /> : null}
+      {mayType ? (
+        <>
+          {entry.slots.some((s) => s.kind === 'layer') ? (
+            <LayersPanel jar={jar} entry={entry} />
+          ) : (
+            <OverviewPanel jar={jar} entry={entry} onChange={onChange} />
+          )}
+          <SlotTabs entry={entry} hasPhotos={person.mayAddPhotos} />
+          <FieldPanel jar={jar} entry={entry} hasNext={next !== null} />
+        </>
+      ) : null}
+      <JarQuestions jar={jar} person={person} entry={entry} />
+      {isMissing ? (
+        <MissDialog
+          jar={jar}
+          onClose={() => setMissing(false)}
+          onDone={() => {
+            setMissing(false)
+            entry.done(`${jar.name} is noted as not read.`)
+          }}
+        />
+      ) : null}
+    </div>
+  )
+}
