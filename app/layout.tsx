@@ -4,7 +4,7 @@ import { cookies, headers } from 'next/headers'
 import { connection } from 'next/server'
 import type { ReactNode } from 'react'
 import { NonceForStyles } from '@/components/shell/nonce-for-styles'
-import { readTheme, themeCookie } from '@/components/shell/theme'
+import { readTheme, themeCookie, typeCookie } from '@/components/shell/theme'
 import { Toasts } from '@/components/ui/toast'
 import './globals.css'
 
@@ -74,11 +74,13 @@ export default async function RootLayout({ children }: { children: ReactNode }) 
   // The nonce of the content security policy is made for each request, so no page may be made ahead.
   await connection()
   const nonce = (await headers()).get('x-nonce') ?? ''
-  const theme = readTheme((await cookies()).get(themeCookie)?.value)
+  const kept = await cookies()
+  const theme = readTheme(kept.get(themeCookie)?.value)
   return (
     <html
       lang="en"
       data-theme={theme === 'system' ? undefined : theme}
+      data-type={kept.get(typeCookie)?.value === 'large' ? 'large' : undefined}
       className={`${text.variable} ${textMore.variable} ${code.variable} ${codeMore.variable}`}
     >
       <body className="font-sans">

@@ -1,5 +1,5 @@
 import { Tray, type Outbox } from '@/components/bench/tray'
-import { ThemeButton } from '@/components/shell/theme-button'
+import { LightSwitch } from '@/components/bench/light-switch'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 
 export function JarHead({ jar, outbox, onWalk }: { jar: BenchJarPage; outbox: Outbox; onWalk: () => void }) {
@@ -25,7 +25,7 @@ export function JarHead({ jar, outbox, onWalk }: { jar: BenchJarPage; outbox: Ou
         {jar.standsAs ? <p className="text-17 font-650 sm:text-18">{capital(jar.standsAs)}</p> : null}
       </div>
       <Tray outbox={outbox} />
-      <ThemeButton className="shrink-0" />
+      <LightSwitch />
     </header>
   )
 }

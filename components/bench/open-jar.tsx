@@ -14,6 +14,7 @@ import { OverviewPanel } from '@/components/bench/overview-panel'
 import { RestPanel } from '@/components/bench/rest-panel'
 import { SlotTabs } from '@/components/bench/slot-tabs'
 import { StationLine } from '@/components/bench/station-line'
+import { useAwake } from '@/components/bench/use-awake'
 import { useJarEntry } from '@/components/bench/use-jar-entry'
 import { WalkStrip } from '@/components/bench/walk-strip'
 import { toast } from '@/components/ui/toast'
@@ -27,6 +28,7 @@ export function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }
   const isDone = jar.state === 'done' || jar.state === 'missed'
   const isResting = jar.state === 'resting' && !jar.isReady
   const mayType = person.mayLog && !isDone && !isResting && !jar.isEarly && jar.isStudyRunning
+  useAwake(mayType)
   const next = nextJar(bench, jar.code, outbox)
   const entry = useJarEntry({ jar, person, outbox, mayType, onChange, onDone: goOn })
 

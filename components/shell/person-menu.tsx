@@ -20,7 +20,12 @@ export type Who = {
   demoPersonId: string | null
 }
 
-const themeWords: Record<Theme, string> = { system: 'As the device', light: 'Bright', dark: 'Dim' }
+const themeWords: Record<Theme, string> = {
+  system: 'As the device',
+  light: 'Bright',
+  dark: 'Dark',
+  dim: 'Dim',
+}
 
 const item =
   'flex min-h-[var(--hit)] cursor-pointer select-none items-center gap-2.5 px-4 outline-none data-[highlighted]:bg-typed data-[highlighted]:shadow-[inset_3px_0_0_var(--ink)]'

@@ -1,4 +1,4 @@
-export const themes = ['system', 'light', 'dark'] as const
+export const themes = ['system', 'light', 'dark', 'dim'] as const
 
 export type Theme = (typeof themes)[number]
 
@@ -7,3 +7,6 @@ export const themeCookie = 'theme'
 export function readTheme(value: string | undefined): Theme {
   return themes.find((theme) => theme === value) ?? 'system'
 }
+
+/** Type one step larger, on this device. */
+export const typeCookie = 'type'

@@ -1,7 +1,7 @@
 'use client'
 
 import { useSyncExternalStore } from 'react'
-import { readTheme, themeCookie, type Theme } from './theme'
+import { readTheme, themeCookie, typeCookie, type Theme } from './theme'
 
 const changed = 'stillstand-theme'
 
@@ -13,14 +13,35 @@ export function useTheme(): { theme: Theme; isDark: boolean; setTheme: (theme: T
     () => matchMedia('(prefers-color-scheme: dark)').matches,
     () => false,
   )
-  return { theme, isDark: theme === 'system' ? isSystemDark : theme === 'dark', setTheme }
+  return { theme, isDark: theme === 'system' ? isSystemDark : theme !== 'light', setTheme }
 }
 
 function setTheme(theme: Theme) {
   const root = document.documentElement
   if (theme === 'system') root.removeAttribute('data-theme')
   else root.setAttribute('data-theme', theme)
-  document.cookie = `${themeCookie}=${theme}; Path=/; Max-Age=31536000; SameSite=Lax`
+  keep(themeCookie, theme)
+}
+
+/** Type one step larger, for whoever reads from further off. */
+export function useLargeType(): { isLarge: boolean; setLarge: (isLarge: boolean) => void } {
+  const isLarge = useSyncExternalStore(
+    listen,
+    () => document.documentElement.dataset.type === 'large',
+    () => false,
+  )
+  return { isLarge, setLarge }
+}
+
+function setLarge(isLarge: boolean) {
+  const root = document.documentElement
+  if (isLarge) root.setAttribute('data-type', 'large')
+  else root.removeAttribute('data-type')
+  keep(typeCookie, isLarge ? 'large' : 'normal')
+}
+
+function keep(cookie: string, value: string) {
+  document.cookie = `${cookie}=${value}; Path=/; Max-Age=31536000; SameSite=Lax`
   window.dispatchEvent(new Event(changed))
 }
 

@@ -15,7 +15,13 @@ import { describe, expect, it } from 'vitest'
 const toRgb = converter('rgb')
 const css = readFileSync('app/globals.css', 'utf8')
 
-function tokensOf(theme: 'light' | 'dark'): Record<string, string> {
+function tokensOf(theme: 'light' | 'dark' | 'dim'): Record<string, string> {
+  if (theme === 'dim') {
+    const [, block] = css.match(/\[data-theme='dim'\] \{([^}]*)\}/)!
+    return Object.fromEntries(
+      [...block!.matchAll(/--(\w+): (#[0-9a-f]{6});/g)].map(([, name, hex]) => [name, hex]),
+    )
+  }
   const pairs = css.matchAll(/--(\w+): light-dark\((#[0-9a-f]{6}), (#[0-9a-f]{6})\)/g)
   return Object.fromEntries(
     [...pairs].map(([, name, light, dark]) => [name, theme === 'light' ? light : dark]),
@@ -42,7 +48,7 @@ function seenThrough(filter: (colour: Rgb) => Color) {
   return (hex: string): string => formatHex(filter(toRgb(hex)!))
 }
 
-describe.each(['light', 'dark'] as const)('the %s theme', (theme) => {
+describe.each(['light', 'dark', 'dim'] as const)('the %s theme', (theme) => {
   const token = tokensOf(theme)
 
   function contrast(front: string, back: string): number {
