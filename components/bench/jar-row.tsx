@@ -1,5 +1,5 @@
 import { TinyJar } from '@/components/bench/tray'
-import type { BenchJar } from '@/lib/bench/queries/today'
+import type { BenchJar } from '@/lib/bench/queries/bench-jar'
 import { shortDay } from '@/lib/report/rules'
 
 const asks = { watch: 'look, stays sealed', measuring: 'opened once', repeat: 'repeat on a spare' }

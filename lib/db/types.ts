@@ -189,6 +189,15 @@ export interface CycleStep {
   studyStationId: string
 }
 
+export interface DayReview {
+  day: string
+  entryIds: string[]
+  id: string
+  remark: Generated<string>
+  reviewedAt: Generated<string>
+  reviewedBy: string
+}
+
 export interface Flag {
   action: string | null
   answeredAt: string | null
@@ -309,6 +318,21 @@ export interface FormulaVersion {
   version: Generated<number>
 }
 
+export interface HandoverNote {
+  claimedAt: string
+  id: string
+  text: string
+  writtenAt: Generated<string>
+  writtenBy: string
+}
+
+export interface HandoverRead {
+  handoverNoteId: string
+  id: string
+  readAt: Generated<string>
+  readBy: string
+}
+
 export interface Holiday {
   addedAt: Generated<string>
   addedBy: string
@@ -381,6 +405,19 @@ export interface Jar {
   studyStationId: string | null
   tareG: Numeric | null
   version: Generated<number>
+}
+
+export interface JarMishap {
+  claimedAt: string
+  happenedAt: string
+  id: string
+  jarId: string
+  kind: string
+  pullJarId: string | null
+  reason: string
+  recordedAt: Generated<string>
+  recordedBy: string
+  studyId: string
 }
 
 export interface JarMove {
@@ -483,6 +520,7 @@ export interface PullJar {
   closedBy: string | null
   id: string
   jarId: string
+  leftOut: Generated<string[]>
   missedReason: string | null
   note: Generated<string>
   openedAt: string | null
@@ -490,6 +528,7 @@ export interface PullJar {
   pullId: string
   repeatOf: string | null
   restUntil: string | null
+  standsInFor: string | null
   state: Generated<string>
   studyId: string
   takenAt: string | null
@@ -768,6 +807,7 @@ export interface DB {
   calibration: Calibration
   client: Client
   cycleStep: CycleStep
+  dayReview: DayReview
   flag: Flag
   flagComment: FlagComment
   formula: Formula
@@ -776,11 +816,14 @@ export interface DB {
   formulaLine: FormulaLine
   formulaStep: FormulaStep
   formulaVersion: FormulaVersion
+  handoverNote: HandoverNote
+  handoverRead: HandoverRead
   holiday: Holiday
   idempotencyAnswer: IdempotencyAnswer
   ingredient: Ingredient
   instrument: Instrument
   jar: Jar
+  jarMishap: JarMishap
   jarMove: JarMove
   lab: Lab
   password: Password

@@ -17,6 +17,10 @@ export const filledJar = z
   })
 export type FilledJar = z.input<typeof filledJar>
 
+/** What happens to a jar besides being read; each is an entry with its reason. */
+export const mishapKinds = ['missed', 'broken', 'lost', 'wrong jar', 'pulled early'] as const
+export type MishapKind = (typeof mishapKinds)[number]
+
 export const jarKeys = {
   one: (code: string) => `/api/jars/${encodeURIComponent(code)}`,
 }

@@ -3,7 +3,8 @@ import { GET as day } from '@/app/api/bench/route'
 import { GET as jarPage } from '@/app/api/bench/[code]/route'
 import { POST as log } from '@/app/api/pulls/[id]/readings/route'
 import { POST as open } from '@/app/api/pulls/[id]/open/route'
-import type { Bench, BenchJar } from '@/lib/bench/queries/today'
+import type { BenchJar } from '@/lib/bench/queries/bench-jar'
+import type { Bench } from '@/lib/bench/queries/today'
 import {
   askedJars,
   benchStudy,

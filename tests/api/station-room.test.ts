@@ -1,3 +1,4 @@
+import { sql } from 'kysely'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { POST as logRoute } from '@/app/api/pulls/[id]/readings/route'
 import { POST as cancelRoute } from '@/app/api/stations/[id]/downtimes/[downtimeId]/cancel/route'
@@ -10,6 +11,7 @@ import { PUT as changeRoute } from '@/app/api/stations/[id]/route'
 import { GET as sheetRoute } from '@/app/api/studies/[code]/sheet/route'
 import { POST as startRoute } from '@/app/api/studies/route'
 import { newId } from '@/lib/db/id'
+import { transact } from '@/lib/db/transact'
 import { loadStays } from '@/lib/shelf-case/queries/evidence'
 import { temperatureRecord } from '@/lib/shelf-case/rules/temperature'
 import { listStandingJars } from '@/lib/station/queries/places'
@@ -230,9 +232,25 @@ describe('moving jars', () => {
     const doubtsOf = async (jarId: string) => {
       const asked = await t.db
         .selectFrom('pullJar')
-        .select(['id', 'version'])
+        .select(['id', 'version', 'studyId'])
         .where('jarId', '=', jarId)
         .executeTakeFirstOrThrow()
+      await transact(t.db, technician.actor, {}, (trx) =>
+        trx
+          .insertInto('jarMishap')
+          .values({
+            id: newId(),
+            studyId: asked.studyId,
+            jarId,
+            pullJarId: asked.id,
+            kind: 'pulled early',
+            reason: 'a test on its first day',
+            happenedAt: sql<string>`app_now()`,
+            claimedAt: new Date().toISOString(),
+            recordedBy: technician.actor.personId,
+          })
+          .execute(),
+      )
       const answer = await call(logRoute, {
         cookie: technician.cookie,
         params: { id: asked.id },

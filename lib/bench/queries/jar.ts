@@ -6,7 +6,7 @@ import { readJarCode } from '@/lib/jar/rules'
 import { spokenDay } from '@/lib/study/rules/calendar'
 import { jarsToRead } from './jars'
 import { getLabDay } from './lab-day'
-import { benchJar } from './today'
+import { benchJar } from './bench-jar'
 import { listCurrentSeries, listInitialMeans, listLastReadings } from './values'
 
 export type BenchJarPage = Awaited<ReturnType<typeof getBenchJar>>
@@ -75,7 +75,10 @@ export async function getBenchJar(db: Db, _actor: Actor, typedCode: string) {
     pack: row.plan.pack,
     note: row.note,
     /** Not due yet: what the screen says instead of offering fields. */
-    isEarly: row.state === 'due' && row.windowFrom > today,
+    isEarly:
+      row.state === 'due' &&
+      row.windowFrom > today &&
+      !row.mishaps.some((one) => one.kind === 'pulled early'),
     instruments: await listUsableInstruments(db, today),
     /** What was already read of this jar in this pull, with corrections and voids. */
     readings: done,

@@ -1,5 +1,6 @@
 import { sql } from 'kysely'
 import type { Db, Trx } from '@/lib/db/client'
+import type { MishapKind } from '@/lib/jar/schema'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
 
 export type BenchJarRow = Awaited<ReturnType<ReturnType<typeof jarsToRead>['execute']>>[number]
@@ -76,5 +77,22 @@ export function jarsToRead(db: Db | Trx) {
       'formula.emulsionType',
       'sb.isReference',
     ])
-    .select(sql<ProtocolPlan>`study.plan`.as('plan'))
+    .select([
+      sql<ProtocolPlan>`study.plan`.as('plan'),
+      // Of a jar that is still open: what of it is on record, so that only the rest is asked for.
+      sql<
+        string[]
+      >`case when pj.state in ('due', 'resting') then (select coalesce(jsonb_agg(distinct r.attribute), '[]')
+        from reading r where r.pull_jar_id = pj.id and not r.is_void
+          and not exists (select from reading newer where newer.supersedes_id = r.id)) else '[]'::jsonb end`.as(
+        'read',
+      ),
+      sql<string | null>`(select jar.code from pull_jar original join jar on jar.id = original.jar_id
+        where original.id = pj.stands_in_for)`.as('standsInFor'),
+      sql<
+        { kind: MishapKind; reason: string; by: string; at: string }[]
+      >`(select coalesce(jsonb_agg(jsonb_build_object(
+          'kind', m.kind, 'reason', m.reason, 'by', by.initials, 'at', m.happened_at) order by m.recorded_at), '[]')
+        from jar_mishap m join person by on by.id = m.recorded_by where m.pull_jar_id = pj.id)`.as('mishaps'),
+    ])
 }

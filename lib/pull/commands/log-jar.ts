@@ -1,17 +1,18 @@
-import { sql } from 'kysely'
 import type { Actor } from '@/lib/auth/actor'
 import type { Trx } from '@/lib/db/client'
-import { newId } from '@/lib/db/id'
 import { refuse } from '@/lib/http/errors'
-import { claimedInstant } from '@/lib/reading/rules/claimed-time'
+import { claimedInstant, paperInstant } from '@/lib/reading/rules/claimed-time'
 import type { JarToLog } from '@/lib/reading/schema/entry'
 import { lockStudyOfPullJar, recomputeSeries, type Recomputed } from '@/lib/series/commands'
 import { loadFrame, type Frame } from '@/lib/series/queries/frame'
 import { dayIn } from '@/lib/study/rules/calendar'
 import { findPullJar, type PullJar } from '../queries/pull-jar'
-import { askFirst, judgeEntries, type Doubted } from '../rules/judge-entries'
-import { readEntries, type ReadEntry } from '../rules/read-entries'
-import { refuseAlreadyRead, refuseOver, refuseStale } from '../rules/refusals'
+import { askFirst, judgeEntries } from '../rules/judge-entries'
+import { isKeptBefore } from '../rules/known-entries'
+import { isAllRead, missingAttributes, readEntries, type ReadEntry } from '../rules/read-entries'
+import { keepInFrame, readingRows, standingIn, voidOf, type ReadingRow } from '../rules/reading-rows'
+import { refuseAlreadyRead, refuseOver, refuseStale, refuseTooEarly } from '../rules/refusals'
+import { closeJar, keepOpen } from './close-jar'
 
 export type LoggedJar = {
   pullJarId: string
@@ -19,6 +20,8 @@ export type LoggedJar = {
   version: number
   state: string
   measuredAt: string
+  /** What is still to be read or left out; the jar stays open for it. */
+  missing: string[]
   readings: {
     id: string
     attribute: string
@@ -29,36 +32,53 @@ export type LoggedJar = {
 } & Recomputed
 
 /**
- * Keeps the readings of one jar in one pull, closes it, and recomputes what they touch, all or nothing. Sent twice
- * it keeps one; read by a second person it asks which one counts.
+ * Keeps the readings of one jar in one pull, closes it unless only a part was read, and recomputes what they touch, all
+ * or nothing. Sent twice it keeps one; read by a second person it asks which one counts.
  */
 export async function logJar(trx: Trx, actor: Actor, input: JarToLog): Promise<LoggedJar> {
   const studyId = await lockStudyOfPullJar(trx, input.pullJarId)
-  const instrumentIds = input.readings.flatMap(({ instrumentId }) => (instrumentId ? [instrumentId] : []))
-  const jar = studyId && (await findPullJar(trx, input.pullJarId, instrumentIds))
+  const jar =
+    studyId &&
+    (await findPullJar(trx, input.pullJarId, {
+      instrumentIds: input.readings.flatMap(({ instrumentId }) => (instrumentId ? [instrumentId] : [])),
+      entryIds: input.readings.map(({ id }) => id),
+    }))
   if (!jar) throw refuse.notFound('There is no such jar in a pull.')
   const frame = await loadFrame(trx, jar.studyId)
-  const sentBefore = frame.readings.filter((row) => input.readings.some((entry) => entry.id === row.id))
-  if (sentBefore.length > 0) return answerAgain(jar, frame, actor, sentBefore)
+  if (isKeptBefore(jar, actor, input)) return answerAgain(jar, frame)
 
   refuseOver(jar)
+  const onRecord = frame.readings.filter((row) => row.pullJarId === jar.id)
   const entries = readEntries(jar, frame, input.readings)
-  if (jar.state === 'done' && !input.resolution) refuseAlreadyRead(jar, frame, entries)
-  refuseStale(jar, input.version)
-  const { measuredAt, clock } = claimedInstant(input, jar.now)
-  refuseTooEarly(jar, measuredAt)
+  refuseNothing(input, entries, onRecord)
+  const isRead = jar.state === 'done'
+  const readTwice = entries.filter(({ entry }) => standingIn(jar, frame, entry.attribute, entry.replicate))
+  if ((isRead || readTwice.length > 0) && !input.resolution) refuseAlreadyRead(jar, frame, entries)
+  if (!isOwnProgress(jar, actor, input, onRecord)) refuseStale(jar, input.version)
+  const { measuredAt, clock } = input.isFromPaper
+    ? paperInstant(input.claimedAt, jar.now)
+    : claimedInstant(input, jar.now)
+  refuseTooEarly(jar, measuredAt, dayIn(frame.study.zone, measuredAt))
   const { doubts, questions } = judgeEntries(jar, frame, entries, measuredAt)
-  if (jar.state !== 'done') askFirst(jar, questions, input)
+  const readNow = [...onRecord, ...entries.map(({ entry }) => entry)]
+  const missing = missingAttributes(jar, readNow, input.leaveOut)
+  if (!isRead) askFirst(questions, input.isPartial ? [] : missing)
 
-  const isTheirs = jar.state === 'done' && input.resolution?.count === 'theirs'
-  const notes = { ...(clock ? { clock } : {}), ...circumstances(jar, frame, measuredAt) }
-  const rows = rowsOf(jar, frame, actor, input, entries, { doubts, measuredAt, notes })
-  await trx
-    .insertInto('reading')
-    .values([...rows, ...(isTheirs ? rows.map((row) => voidOf(row, input.resolution!.reason)) : [])])
-    .execute()
-  const version = await closeJar(trx, actor, jar, input)
-  if (!isTheirs) keepInFrame(frame, jar, rows, doubts)
+  const isTheirs = input.resolution?.count === 'theirs'
+  const rows = readingRows(jar, frame, actor, input, entries, { doubts, measuredAt, clock })
+  const isVoided = (row: ReadingRow) =>
+    isTheirs && (isRead || standingIn(jar, frame, row.attribute, row.replicate) !== undefined)
+  if (rows.length > 0) {
+    const voids = rows.filter(isVoided).map((row) => voidOf(row, input.resolution!.reason))
+    await trx
+      .insertInto('reading')
+      .values([...rows, ...voids])
+      .execute()
+  }
+  const closes = isRead || !input.isPartial || isAllRead(jar, readNow)
+  const version = closes ? await closeJar(trx, actor, jar, input) : await keepOpen(trx, actor, jar, input)
+  const counting = rows.filter((row) => !isVoided(row))
+  keepInFrame(frame, jar, counting, doubts, closes)
   const recomputed = await recomputeSeries(trx, actor, jar.studyId, {
     only: [...new Set(entries.map(({ entry }) => entry.attribute))],
     frame,
@@ -67,8 +87,9 @@ export async function logJar(trx: Trx, actor: Actor, input: JarToLog): Promise<L
     pullJarId: jar.id,
     jarCode: jar.code,
     version,
-    state: 'done',
+    state: closes ? 'done' : jar.state,
     measuredAt,
+    missing: closes ? [] : missing,
     readings: rows.map(({ id, attribute, replicate, value }) => ({
       id,
       attribute,
@@ -80,143 +101,41 @@ export async function logJar(trx: Trx, actor: Actor, input: JarToLog): Promise<L
   }
 }
 
-type Row = ReturnType<typeof rowsOf>[number]
+function refuseNothing(input: JarToLog, entries: readonly ReadEntry[], onRecord: readonly unknown[]): void {
+  const isClosing = !input.isPartial && (onRecord.length > 0 || input.readings.length > 0)
+  if (entries.length > 0 || isClosing) return
+  const sentence = 'There is nothing to keep: fill in at least one field.'
+  throw refuse.invalid(sentence, { readings: sentence })
+}
 
-function rowsOf(
+/**
+ * A part adds to what is there, whatever was read meanwhile. And whoever read parts of a jar may close it on the version
+ * from before them, because without network their answers come after the next part was typed.
+ */
+function isOwnProgress(
   jar: PullJar,
-  frame: Frame,
   actor: Actor,
   input: JarToLog,
-  entries: readonly ReadEntry[],
-  found: { doubts: Doubted; measuredAt: string; notes: Record<string, unknown> },
-) {
-  const isMine = jar.state === 'done' && input.resolution?.count === 'mine'
-  return entries.map(({ entry, read }) => {
-    const theirs = isMine
-      ? frame.readings.find(
-          (row) =>
-            row.pullJarId === jar.id &&
-            row.attribute === entry.attribute &&
-            row.replicate === entry.replicate,
-        )
-      : undefined
-    return {
-      id: entry.id,
-      studyId: jar.studyId,
-      batchId: jar.batchId,
-      studyStationId: jar.studyStationId,
-      pullJarId: jar.id,
-      jarId: jar.jarId,
-      attribute: entry.attribute,
-      replicate: entry.replicate,
-      value: read.value as number | null,
-      word: read.word,
-      typed: entry.typed,
-      detail: JSON.stringify({ ...read.detail, ...found.notes }),
-      instrumentId: entry.instrumentId ?? null,
-      doubts: JSON.stringify(found.doubts.get(entry.id) ?? []),
-      isVoid: false,
-      supersedesId: theirs?.id ?? null,
-      reason: theirs ? input.resolution!.reason : null,
-      measuredAt: found.measuredAt,
-      claimedAt: input.claimedAt,
-      recordedBy: actor.personId,
-    }
-  })
-}
-
-function voidOf(row: Row, reason: string): Row {
-  return {
-    ...row,
-    id: newId(),
-    value: null,
-    word: null,
-    typed: '',
-    detail: '{}',
-    doubts: '[]',
-    isVoid: true,
-    supersedesId: row.id,
-    reason,
-  }
-}
-
-/** In one statement: the jar of the pull is done, and a jar that was opened is spent. */
-async function closeJar(trx: Trx, actor: Actor, jar: PullJar, input: JarToLog): Promise<number> {
-  const jarState = jar.asks === 'watch' ? 'stored' : 'spent'
-  const isFirst = jar.state !== 'done'
-  const { rows } = await sql<{ version: number }>`
-    with moved as (
-      update jar set state = ${jarState}, version = version + 1
-        where id = ${jar.jarId} and state <> ${jarState}
-    )
-    update pull_jar set state = 'done', version = version + 1,
-        closed_at = case when ${isFirst} then app_now() else closed_at end,
-        closed_by = case when ${isFirst} then ${actor.personId}::uuid else closed_by end,
-        note = case when ${input.note} = '' then note else ${input.note} end
-      where id = ${jar.id} and version = ${input.version}
-      returning version
-  `.execute(trx)
-  if (!rows[0]) refuseStale(jar, -1)
-  return rows[0]!.version
-}
-
-/** The series are computed from what the database now holds, without asking it again. */
-function keepInFrame(frame: Frame, jar: PullJar, rows: readonly Row[], doubts: Doubted): void {
-  const superseded = new Set(rows.flatMap((row) => (row.supersedesId ? [row.supersedesId] : [])))
-  const kept = frame.readings.filter((row) => !superseded.has(row.id))
-  const added = rows.map((row) => ({
-    ...row,
-    detail: JSON.parse(row.detail) as Record<string, unknown>,
-    doubts: doubts.get(row.id) ?? [],
-    jarCode: jar.code,
-    pullId: jar.pullId,
-    dueOn: jar.dueOn,
-    repeatOf: jar.repeatOf,
-    recordedAt: jar.now,
-  }))
-  frame.readings = [...kept, ...added].toSorted((a, b) => a.measuredAt.localeCompare(b.measuredAt))
-  // The repeat that was pending has been read.
-  const repeat = frame.study.repeats.find((one) => one.id === jar.id)
-  if (repeat) repeat.state = 'done'
-}
-
-/** Noted beside the reading; the statistics use the actual time. */
-function circumstances(jar: PullJar, frame: Frame, measuredAt: string): Record<string, unknown> {
-  const day = dayIn(frame.study.zone, measuredAt)
-  const isOutside = day < jar.windowFrom || day > jar.windowTo
-  const restedHours =
-    jar.takenAt && jar.asks !== 'watch'
-      ? Math.max(0, Math.round((Date.parse(measuredAt) - Date.parse(jar.takenAt)) / 360_000) / 10)
-      : null
-  return {
-    ...(isOutside ? { window: { from: jar.windowFrom, to: jar.windowTo } } : {}),
-    ...(restedHours === null ? {} : { restedHours }),
-  }
-}
-
-function refuseTooEarly(jar: PullJar, measuredAt: string): void {
-  if (Date.parse(measuredAt) >= Date.parse(jar.startedAt)) return
-  throw refuse.invalid(
-    `This says jar ${jar.code} was measured before study ${jar.studyCode} began. Check the tablet's clock and the time given.`,
-    { claimedAt: 'This time lies before the study.' },
-  )
+  onRecord: readonly { recordedBy: string }[],
+): boolean {
+  if (jar.state === 'done') return false
+  if (input.isPartial) return true
+  return jar.openedBy === actor.personId && onRecord.some((row) => row.recordedBy === actor.personId)
 }
 
 /** The same entries again, under another key: what was kept the first time. */
-function answerAgain(jar: PullJar, frame: Frame, actor: Actor, rows: Frame['readings']): LoggedJar {
-  if (rows.some((row) => row.pullJarId !== jar.id || row.recordedBy !== actor.personId)) {
-    throw refuse.conflict(
-      'One of these readings was kept before, for another jar. Reload, then enter it anew.',
-    )
-  }
-  const keys = new Set(rows.map((row) => row.attribute))
+function answerAgain(jar: PullJar, frame: Frame): LoggedJar {
+  const kept = jar.keptEntries
+  const keys = new Set(kept.map((row) => row.attribute))
+  const onRecord = frame.readings.filter((row) => row.pullJarId === jar.id)
   return {
     pullJarId: jar.id,
     jarCode: jar.code,
     version: jar.version,
     state: jar.state,
-    measuredAt: rows[0]!.measuredAt,
-    readings: rows.map(({ id, attribute, replicate, value, doubts }) => ({
+    measuredAt: new Date(kept[0]?.measuredAt ?? jar.closedAt!).toISOString(),
+    missing: jar.state === 'done' ? [] : missingAttributes(jar, onRecord),
+    readings: kept.map(({ id, attribute, replicate, value, doubts }) => ({
       id,
       attribute,
       replicate,

@@ -20,8 +20,27 @@ export type CycleHalf = {
 }
 export type PullJar = NonNullable<Awaited<ReturnType<typeof findPullJar>>>
 
+/** An entry of the request that is on record already, whatever became of it since. */
+export type KeptEntry = {
+  id: string
+  pullJarId: string | null
+  recordedBy: string
+  attribute: string
+  replicate: number
+  value: number | null
+  typed: string
+  doubts: { reason: string; sentence: string }[]
+  measuredAt: string
+}
+
+type Sent = { instrumentIds?: string[]; entryIds?: string[] }
+
 /** One jar asked for in a pull, with all that a reading of it is judged by. */
-export async function findPullJar(db: Db | Trx, pullJarId: string, instrumentIds: string[] = []) {
+export async function findPullJar(
+  db: Db | Trx,
+  pullJarId: string,
+  { instrumentIds = [], entryIds = [] }: Sent = {},
+) {
   return db
     .selectFrom('pullJar as pj')
     .innerJoin('pull', 'pull.id', 'pj.pullId')
@@ -50,6 +69,7 @@ export async function findPullJar(db: Db | Trx, pullJarId: string, instrumentIds
       'closer.name as closerName',
       'closer.initials as closerInitials',
       'pj.missedReason',
+      'pj.note',
       'pull.id as pullId',
       'pull.label',
       'pull.timeWeeks',
@@ -87,6 +107,13 @@ export async function findPullJar(db: Db | Trx, pullJarId: string, instrumentIds
         from instrument i left join lateral (select due_on, result from calibration
           where instrument_id = i.id order by calibrated_at desc, id desc limit 1) c on true
         where i.id = any(${instrumentIds}::uuid[]))`.as('instruments'),
+      sql<KeptEntry[]>`(select coalesce(jsonb_agg(jsonb_build_object('id', r.id, 'pullJarId', r.pull_jar_id,
+          'recordedBy', r.recorded_by, 'attribute', r.attribute, 'replicate', r.replicate, 'value', r.value,
+          'typed', r.typed, 'doubts', r.doubts, 'measuredAt', r.measured_at) order by r.id), '[]')
+        from reading r where r.id = any(${entryIds}::uuid[]))`.as('keptEntries'),
+      sql<boolean>`exists (select from jar_mishap m where m.pull_jar_id = pj.id and m.kind = 'pulled early')`.as(
+        'isPulledEarly',
+      ),
       sql<CycleHalf[]>`(select coalesce(jsonb_agg(jsonb_build_object('cycle', step.cycle, 'half', step.half,
           'reachedC', step.reached_c, 'isFrozenThrough', step.is_frozen_through,
           'hours', extract(epoch from step.ended_at - step.begun_at) / 3600)), '[]')

@@ -8,7 +8,7 @@ import { sentenceContext } from '@/lib/series/rules/spoken'
 import { placeDoubts } from '@/lib/station/rules/moves'
 import { dayIn } from '@/lib/study/rules/calendar'
 import type { PullJar } from '../queries/pull-jar'
-import { missingAttributes, type ReadEntry } from './read-entries'
+import type { ReadEntry } from './read-entries'
 
 /** One thing that the person is asked about before it is taken. */
 export type Question = { field: string; attribute: string; readingId: string | null; sentence: string }
@@ -76,12 +76,8 @@ export function judgeEntries(
 }
 
 /** Asks once, about everything at a time: what is unlikely, and what is missing. */
-export function askFirst(
-  jar: PullJar,
-  questions: Question[],
-  input: { readings: readonly ReadEntry['entry'][]; leaveOut: readonly string[] },
-): void {
-  const missing = missingAttributes(jar, input.readings, input.leaveOut).map((key): Question => {
+export function askFirst(questions: Question[], missing: readonly string[]): void {
+  const open = missing.map((key): Question => {
     const label = attributeOf(key as AttributeKey).label
     return {
       field: `missing.${key}`,
@@ -90,7 +86,7 @@ export function askFirst(
       sentence: `${label} is not read yet. Read it, or say that it is left out.`,
     }
   })
-  const all = [...questions, ...missing]
+  const all = [...questions, ...open]
   const [first] = all
   if (!first) return
   const more = all.length > 1 ? ` ${all.length - 1} more to confirm.` : ''

@@ -16,8 +16,9 @@ export type ReadEntry = {
   read: EntryValue
 }
 
-/** Values of all fields of a jar, or one refusal that names each field that cannot be so. */
+/** Values of all fields of a jar that are new, or one refusal that names each field that cannot be so. */
 export function readEntries(jar: PullJar, frame: Frame, entries: readonly Entry[]): ReadEntry[] {
+  const kept = new Set(jar.keptEntries.map((one) => one.id))
   const planned = plannedFor(jar)
   const fields: Record<string, string> = {}
   const seen = new Set<string>()
@@ -36,6 +37,7 @@ export function readEntries(jar: PullJar, frame: Frame, entries: readonly Entry[
       return []
     }
     seen.add(name)
+    if (kept.has(entry.id)) return []
     const instrument = jar.instruments.find((one) => one.id === entry.instrumentId) ?? null
     if (entry.instrumentId && !instrument) {
       fields[`${path}.instrumentId`] = 'There is no such instrument. Choose one from the list.'
@@ -66,12 +68,25 @@ export function readEntries(jar: PullJar, frame: Frame, entries: readonly Entry[
 /** What the protocol asks for, is not there, and was not said to be left out. */
 export function missingAttributes(
   jar: PullJar,
-  entries: readonly Entry[],
-  leaveOut: readonly string[],
+  entries: readonly { attribute: string }[],
+  leaveOut: readonly string[] = [],
 ): string[] {
   return plannedFor(jar)
     .map((planned) => planned.attribute)
     .filter((key) => !leaveOut.includes(key) && !entries.some((entry) => entry.attribute === key))
+}
+
+/** Every replicate of everything that the protocol asks of this jar is on record. */
+export function isAllRead(
+  jar: PullJar,
+  entries: readonly { attribute: string; replicate: number }[],
+): boolean {
+  return plannedFor(jar).every((planned) => {
+    const read = new Set(
+      entries.filter((one) => one.attribute === planned.attribute).map((one) => one.replicate),
+    )
+    return read.size >= (jar.asks === 'watch' ? 1 : planned.replicates)
+  })
 }
 
 function lastValue(frame: Frame, jar: PullJar, entry: Entry): number | null {

@@ -3,6 +3,7 @@ import { agreementLimit } from '@/lib/science/plausible'
 import type { AttributeKey } from '@/lib/reading/schema/attributes'
 import type { Frame } from '@/lib/series/queries/frame'
 import { initialOf, repeatabilitySd } from '@/lib/series/rules/input'
+import { spokenDay } from '@/lib/study/rules/calendar'
 import { mean } from '@/lib/science/mean'
 import type { PullJar } from '../queries/pull-jar'
 import type { ReadEntry } from './read-entries'
@@ -18,6 +19,23 @@ export function refuseOver(jar: PullJar): void {
       { missedReason: jar.missedReason, by: jar.closerName, at: jar.closedAt },
     )
   }
+}
+
+/** Before the study, or before the window of its pull without word that this was so. */
+export function refuseTooEarly(jar: PullJar, measuredAt: string, day: string): void {
+  if (Date.parse(measuredAt) < Date.parse(jar.startedAt)) {
+    throw refuse.invalid(
+      `This says jar ${jar.code} was measured before study ${jar.studyCode} began. Check the tablet's clock and the time given.`,
+      { claimedAt: 'This time lies before the study.' },
+    )
+  }
+  if (day >= jar.windowFrom || jar.isPulledEarly) return
+  throw new AppError(
+    409,
+    'early',
+    `The window of jar ${jar.code} opens on ${spokenDay(jar.windowFrom)}. Note that it is pulled early, and why; then keep the readings.`,
+    { detail: { windowFrom: jar.windowFrom, day } },
+  )
 }
 
 export function refuseDone(jar: PullJar): void {
@@ -53,15 +71,20 @@ export function refuseStale(jar: PullJar, version: number): void {
 /** Both stay on record: the answer holds what the other has read, for the person to say which one counts. */
 export function refuseAlreadyRead(jar: PullJar, frame: Frame, entries: readonly ReadEntry[]): never {
   const theirs = frame.readings.filter((row) => row.pullJarId === jar.id)
+  // A jar that is read in part is in the hands of whoever kept the last part.
+  const by =
+    jar.state === 'done'
+      ? { personId: jar.closedBy, name: jar.closerName, initials: jar.closerInitials }
+      : { personId: jar.openedBy, name: jar.openerName, initials: jar.openerInitials }
   throw new AppError(
     409,
     'already read',
-    `${jar.closerName} has also read ${jar.code}. Both stay on record; say which one counts, and why.`,
+    `${by.name} has also read ${jar.code}. Both stay on record; say which one counts, and why.`,
     {
       detail: {
         version: jar.version,
-        by: { personId: jar.closedBy, name: jar.closerName, initials: jar.closerInitials },
-        at: jar.closedAt,
+        by,
+        at: jar.state === 'done' ? jar.closedAt : jar.openedAt,
         readings: theirs.map(
           ({ id, attribute, replicate, value, word, typed, detail, measuredAt, instrumentId }) => ({
             id,

@@ -1,3 +1,5 @@
+import { refuse } from '@/lib/http/errors'
+
 /** A device's clock further off than this is marked on what it recorded. */
 const farOffMs = 15 * 60_000
 
@@ -17,4 +19,12 @@ export function claimedInstant(
     measuredAt: new Date(Math.min(corrected, Date.parse(now))).toISOString(),
     clock: Math.abs(skewMs) > farOffMs ? { skewSeconds: Math.round(skewMs / 1000) } : null,
   }
+}
+
+/** A time read off paper is no device's: it stands as it is written, and lies before now. */
+export function paperInstant(claimedAt: string, now: string): { measuredAt: string; clock: null } {
+  if (Date.parse(claimedAt) <= Date.parse(now))
+    return { measuredAt: new Date(claimedAt).toISOString(), clock: null }
+  const sentence = 'The time on paper lies ahead of now. Type when the jar was really measured.'
+  throw refuse.invalid(sentence, { claimedAt: sentence })
 }

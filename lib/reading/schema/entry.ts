@@ -50,7 +50,12 @@ export const deviceTimes = z.object({
 export const readingsOfJar = deviceTimes.extend({
   version: z.number().int().positive(),
   note: z.string().trim().max(2000).default(''),
-  readings: z.array(entry).min(1, 'There is nothing to keep: fill in at least one field.').max(60),
+  /** None only where a jar that was read in part is closed. */
+  readings: z.array(entry).max(60),
+  /** These go on record; the jar stays open until the rest is read or left out. */
+  isPartial: z.boolean().default(false),
+  /** Written on paper first: `claimedAt` is the time that stands there. */
+  isFromPaper: z.boolean().default(false),
   /** What the protocol asks for and is knowingly not read. */
   leaveOut: z.array(attributeKey).default([]),
   resolution: resolution.optional(),
