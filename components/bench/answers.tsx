@@ -8,8 +8,9 @@ import { Dialog } from '@/components/ui/dialog'
 import { Field } from '@/components/ui/field'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 import { ClientError } from '@/lib/http/fetcher'
-import { attributes, type AttributeKey } from '@/lib/reading/schema/attributes'
-import { figure } from '@/lib/report/rules'
+import { type AttributeKey, attributeName } from '@/lib/reading/schema/attributes'
+import { writtenAs } from '@/lib/bench/rules'
+import { shownValue } from '@/lib/study/rules/words'
 
 /** What the server gives when someone else has read the jar: lib/pull/rules/refusals.ts. */
 export type AlreadyRead = {
@@ -100,6 +101,9 @@ export function TwoPeople({ jar, person, theirs, mine, isBusy, onDecide, onClose
   const [count, setCount] = useState<'mine' | 'theirs'>('mine')
   const [reason, setReason] = useState('')
   const apart = theirs.comparisons[0]
+  // A distance between words of a scale is a number, not a word.
+  const distance = (key: string, size: number) =>
+    shownValue({ ...writtenAs(jar.fields, key), words: null }, size)
   return (
     <Dialog
       isOpen
@@ -128,7 +132,7 @@ export function TwoPeople({ jar, person, theirs, mine, isBusy, onDecide, onClose
       <div className="grid gap-3 sm:grid-cols-2" role="radiogroup" aria-label="Which counts">
         <Side
           name={`Yours, ${person.initials}`}
-          lines={mine.map((e) => `${attributes[e.attribute].label} ${e.typed}`)}
+          lines={mine.map((e) => `${attributeName(e.attribute)} ${e.typed}`)}
           isPicked={count === 'mine'}
           onPick={() => setCount('mine')}
         />
@@ -136,7 +140,7 @@ export function TwoPeople({ jar, person, theirs, mine, isBusy, onDecide, onClose
           name={theirs.by.name}
           lines={theirs.readings.map(
             (r) =>
-              `${attributes[r.attribute].label} ${r.word ?? (r.value === null ? r.typed : figure(r.attribute, r.value))}`,
+              `${attributeName(r.attribute)} ${r.word ?? (r.value === null ? r.typed : shownValue(writtenAs(jar.fields, r.attribute), r.value))}`,
           )}
           isPicked={count === 'theirs'}
           onPick={() => setCount('theirs')}
@@ -144,8 +148,8 @@ export function TwoPeople({ jar, person, theirs, mine, isBusy, onDecide, onClose
       </div>
       {apart ? (
         <p className="font-650">
-          {figure(apart.attribute, apart.difference)} apart in {attributes[apart.attribute].label}. A jar’s
-          own scatter is {figure(apart.attribute, apart.scatter)}:{' '}
+          {distance(apart.attribute, apart.difference)} apart in {attributeName(apart.attribute)}. A jar’s own
+          scatter is {distance(apart.attribute, apart.scatter)}:{' '}
           {apart.agree ? 'they agree.' : 'they do not agree.'}
         </p>
       ) : null}

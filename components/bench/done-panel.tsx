@@ -10,9 +10,11 @@ import type { BenchJarPage } from '@/lib/bench/queries/jar'
 import type { BenchJar } from '@/lib/bench/queries/bench-jar'
 import { newId } from '@/lib/db/id'
 import { ClientError, send } from '@/lib/http/fetcher'
-import { attributes, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { attributeName } from '@/lib/reading/schema/attributes'
 import { readingKeys } from '@/lib/reading/schema/change'
-import { dayText, figure } from '@/lib/report/rules'
+import { dayText } from '@/lib/report/rules'
+import { writtenAs } from '@/lib/bench/rules'
+import { shownWithUnit } from '@/lib/study/rules/words'
 
 type Props = {
   jar: BenchJarPage
@@ -51,10 +53,12 @@ export function DonePanel({ jar, mayLog, onChange, onWalk, next, onOpen }: Props
                   className="flex min-h-16 flex-wrap items-center justify-between gap-3 border-b border-hair py-1"
                 >
                   <span className={isGone ? 'text-soft' : ''}>
-                    <b>{attributes[r.attribute as AttributeKey].label}</b>{' '}
+                    <b>{attributeName(r.attribute)}</b>{' '}
                     <span className={isGone ? 'line-through' : ''}>
-                      {r.word ?? (r.value === null ? r.typed : figure(r.attribute, r.value))}{' '}
-                      {r.word ? '' : attributes[r.attribute as AttributeKey].unit}
+                      {r.word ??
+                        (r.value === null
+                          ? r.typed
+                          : shownWithUnit(writtenAs(jar.fields, r.attribute), r.value))}
                     </span>
                     <span className="block text-17 text-soft">
                       typed {r.typed} by {r.by}

@@ -1,5 +1,6 @@
 'use client'
 
+import { shownValue } from '@/lib/study/rules/words'
 import { useState } from 'react'
 import type { JarEntry } from '@/components/bench/use-jar-entry'
 import { HollowDot } from '@/components/bench/value-panel'
@@ -11,7 +12,7 @@ import { ErrorNote } from '@/components/ui/error-note'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 import { send } from '@/lib/http/fetcher'
 import { pullKeys } from '@/lib/pull/schema'
-import { figure, shortDay } from '@/lib/report/rules'
+import { shortDay } from '@/lib/report/rules'
 
 type Props = { jar: BenchJarPage; entry: JarEntry; onChange: () => void }
 
@@ -63,7 +64,7 @@ export function OverviewPanel({ jar, entry, onChange }: Props) {
                   {slot.field.last.length === 0 ? 'first reading' : <HollowDot />}{' '}
                   {slot.field.last.slice(0, 3).map((l) => (
                     <span key={l.readingId} className="mr-3 inline-block whitespace-nowrap">
-                      {l.word ?? (l.value === null ? l.typed : figure(slot.field.attribute, l.value))}{' '}
+                      {l.word ?? (l.value === null ? l.typed : shownValue(slot.field, l.value))}{' '}
                       <span className="text-soft">{shortDay(l.day)}</span>
                     </span>
                   ))}

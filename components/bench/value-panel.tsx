@@ -1,5 +1,6 @@
 'use client'
 
+import { shownValue } from '@/lib/study/rules/words'
 import { useEffect, useRef, type ReactNode } from 'react'
 import { instrumentKind } from '@/components/bench/day-instrument'
 import type { Slot } from '@/components/bench/draft'
@@ -11,7 +12,7 @@ import { afterKey, NumberPad } from '@/components/ui/number-pad'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 import type { FigureFacts } from '@/lib/science/methods/method'
 import { readTyped } from '@/lib/reading/schema/typed'
-import { dayText, figure } from '@/lib/report/rules'
+import { dayText } from '@/lib/report/rules'
 
 type Props = {
   jar: BenchJarPage
@@ -84,7 +85,7 @@ export function ValuePanel({
               >
                 {verdict.state === 'value' && slot.kind !== 'number' ? (
                   <Computed
-                    text={`${figure(field.attribute, verdict.value)} ${field.unit}`}
+                    text={`${shownValue(field, verdict.value)} ${field.unit}`}
                     facts={slot.kind === 'torque' ? torqueFacts(field, readTyped(text) ?? 0) : null}
                   />
                 ) : (
@@ -94,7 +95,7 @@ export function ValuePanel({
               <p className="text-17">
                 {last && last.value !== null ? (
                   <>
-                    <HollowDot /> {figure(field.attribute, last.value)} on {dayText(last.day)}
+                    <HollowDot /> {shownValue(field, last.value)} on {dayText(last.day)}
                   </>
                 ) : (
                   'first reading'
@@ -179,7 +180,7 @@ export function FieldBand({ field, now, width, isQuiet = false }: BandProps) {
       >
         <span>{bandText(field)}</span>
         {field.initial !== null && marks.length > 0 ? (
-          <span>initial {figure(field.attribute, field.initial)}</span>
+          <span>initial {shownValue(field, field.initial)}</span>
         ) : null}
       </p>
     </div>

@@ -1,7 +1,7 @@
+import { shownValue } from '@/lib/study/rules/words'
 import type { DraftEntry, Slot } from '@/components/bench/draft'
 import type { BenchField } from '@/lib/bench/rules'
 import { ImpossibleEntry, valueOf } from '@/lib/reading/rules/value'
-import { figure } from '@/lib/report/rules'
 import { bandUsed, isNearEdge } from '@/lib/science/band'
 import { percentOf } from '@/lib/science/percent'
 
@@ -43,7 +43,7 @@ function judged(field: BenchField, value: number): Verdict {
     const side = isBelow ? 'below' : 'above'
     const by =
       field.unit === '%' || edge === 0
-        ? `${figure(field.attribute, Math.abs(value - edge))} ${field.unit === '%' ? 'points' : field.unit}`
+        ? `${shownValue(field, Math.abs(value - edge))} ${field.unit === '%' ? 'points' : field.unit}`
         : `${percentOf(Math.abs(value - edge), edge).toFixed(1)} %`
     return {
       state: 'value',
@@ -69,7 +69,7 @@ function judged(field: BenchField, value: number): Verdict {
 /** 5.20 to 5.80; at most 2.0; at least 38 600. */
 export function bandText(field: BenchField): string {
   const { lower, upper } = field.band ?? { lower: null, upper: null }
-  const f = (n: number) => figure(field.attribute, n)
+  const f = (n: number) => shownValue(field, n)
   if (lower !== null && upper !== null) return `band ${f(lower)} to ${f(upper)}`
   if (upper !== null) return `allowed up to ${f(upper)}`
   if (lower !== null) return `allowed down to ${f(lower)}`

@@ -40,6 +40,8 @@ export type CurveNote = { weeks: number; text: string }
 
 export type CurveInput = {
   title: string
+  /** The key of the attribute that it shows. */
+  attribute?: string
   /** Lines of small print under the title: unit, method. */
   unit: string[]
   /** Decimals of the numbers on the axis. */

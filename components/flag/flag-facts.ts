@@ -1,5 +1,4 @@
 import type { FlagPage } from '@/lib/flag/queries/one'
-import { attributes, type AttributeKey } from '@/lib/reading/schema/attributes'
 import { instrumentDayMethod, ruleMethods } from '@/lib/science/methods/drift'
 import { exactly, factsOf, type FigureFacts, type Values } from '@/lib/science/methods/method'
 import { dayIn, spokenDay } from '@/lib/study/rules/calendar'
@@ -35,7 +34,7 @@ const measured = new Set([
 const shares = new Set(['used', 'usedNow', 'usedAtEnd'])
 
 function evidenceValues(flag: FlagPage): Values {
-  const unit = attributes[flag.attribute as AttributeKey]?.unit ?? ''
+  const { unit } = flag
   return Object.fromEntries(
     Object.entries(flag.evidence).map(([key, value]): [string, string | number | null] => {
       if (key === 'residuals') return [key, residualsText(value)]

@@ -1,6 +1,7 @@
+import { attributeName, attributeOf } from '@/lib/reading/schema/attributes'
 import type { FlagPage } from '@/lib/flag/queries/one'
 import { addDays, spokenDay } from '@/lib/study/rules/calendar'
-import { attributeName, inSentence, type Phrase } from '@/lib/study/rules/finding'
+import { inSentence, type Phrase } from '@/lib/study/rules/finding'
 import { listed, shownWithUnit } from '@/lib/study/rules/words'
 import { stationText } from '@/lib/flag/rules/list'
 import { flaggedValue, instrumentNoun, isDownwards } from './flag-words'
@@ -122,21 +123,21 @@ function doubtWords(rule: string): string {
 function valueSentence(flag: FlagPage): string {
   const value = flaggedValue(flag)
   if (value === null || flag.rule === 'common shift') return flag.sentence
-  const text = shownWithUnit(flag.attribute, value)
+  const text = shownWithUnit(flag, value)
   const on = flag.readOn ? ` on ${spokenDay(flag.readOn, false)}` : ''
   const { edge, side, used, detectionLimit, expected, repeat } = flag.evidence
   const limit =
     typeof edge === 'number'
-      ? `allowed ${side === 'lower' ? 'down' : 'up'} to ${shownWithUnit(flag.attribute, edge)}`
+      ? `allowed ${side === 'lower' ? 'down' : 'up'} to ${shownWithUnit(flag, edge)}`
       : ''
   if (typeof repeat === 'number')
-    return `${text} and ${shownWithUnit(flag.attribute, repeat)} in two jars, further apart than repeats explain; a third decides.`
+    return `${text} and ${shownWithUnit(flag, repeat)} in two jars, further apart than repeats explain; a third decides.`
   if (flag.rule === 'out') return `${capitalised(text)}${on}, ${limit}.`
   if (typeof used === 'number') return `${capitalised(text)}${on} has used ${share(used)} of its band.`
   if (typeof detectionLimit === 'number')
-    return `${text}${on}, above the ${shownWithUnit('separation', detectionLimit)} that can be told from none.`
+    return `${text}${on}, above the ${shownWithUnit(attributeOf('separation'), detectionLimit)} that can be told from none.`
   if (typeof expected === 'number')
-    return `${text}${on}, where its own line leads to ${shownWithUnit(flag.attribute, expected)}.`
+    return `${text}${on}, where its own line leads to ${shownWithUnit(flag, expected)}.`
   if (flag.rule === 'lean') return leanSentence(flag)
   return flag.sentence
 }

@@ -1,8 +1,8 @@
+import { attributeName } from '@/lib/reading/schema/attributes'
 import { JarGlyph } from '@/components/marks/jar-glyph'
 import { heatLine } from '@/components/marks/heat'
 import { StationLabel } from '@/components/ui/station-label'
 import { spokenDay } from '@/lib/study/rules/calendar'
-import { attributeName } from '@/lib/study/rules/finding'
 import type { FlagContext } from './flag-context'
 
 type Props = {

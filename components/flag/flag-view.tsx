@@ -11,10 +11,10 @@ import { Heading } from '@/components/ui/heading'
 import type { FlagPage } from '@/lib/flag/queries/one'
 import { flagKeys } from '@/lib/flag/schema'
 import { fetcher } from '@/lib/http/fetcher'
-import { attributeKey } from '@/lib/reading/schema/attributes'
+import { attributeKey, attributeOf } from '@/lib/reading/schema/attributes'
 import { percentOf } from '@/lib/science/percent'
 import { dayIn, spokenDay } from '@/lib/study/rules/calendar'
-import { isWorded, shownValue, shownWithUnit } from '@/lib/study/rules/words'
+import { shownValue, shownWithUnit } from '@/lib/study/rules/words'
 import { AnswerPanel } from './answer-panel'
 import { Comments } from './comments'
 import type { FlagContext } from './flag-context'
@@ -71,7 +71,7 @@ export function FlagView({ number, context, rights }: Props) {
           {context.shelf ? (
             <FlagShelf
               shelf={context.shelf}
-              attribute={isWorded(flag.attribute) ? flag.attribute : 'separation'}
+              attribute={flag.words ? flag.attribute : 'separation'}
               detectionPercent={context.detectionPercent}
               allowed={whole(allowedOf(flag) ?? '')}
             />
@@ -150,7 +150,7 @@ function stateText(flag: FlagPage, raisedOn: string): string {
 
 function ringText(flag: FlagPage): string {
   const value = flag.readingValue ?? flaggedValue(flag)
-  const text = value === null ? '' : shownValue(flag.attribute, value)
+  const text = value === null ? '' : shownValue(flag, value)
   return [text, flag.readOn ? `on ${spokenDay(flag.readOn, false)}` : ''].filter(Boolean).join(' ')
 }
 
@@ -159,7 +159,7 @@ function caption(flag: FlagPage, unit: string): string {
   return [
     unit && unit !== flag.method ? `, ${unit}` : '',
     flag.method ? `, ${flag.method}` : '',
-    initial === undefined ? '.' : `. Initial ${shownWithUnit(flag.attribute, initial)}.`,
+    initial === undefined ? '.' : `. Initial ${shownWithUnit(flag, initial)}.`,
   ].join('')
 }
 
@@ -181,9 +181,8 @@ function sign(value: number): string {
 }
 
 function allowedOf(flag: FlagPage): string | null {
-  const shown = isWorded(flag.attribute) ? flag.attribute : 'separation'
-  const of = shown === 'separation' ? flag.separation : flag.series
+  const of = flag.words ? flag.series : flag.separation
   const upper = of?.finding.band.upper
   if (typeof upper !== 'number') return null
-  return `allowed up to ${shownWithUnit(shown, upper)}`
+  return `allowed up to ${shownWithUnit(flag.words ? flag : attributeOf('separation'), upper)}`
 }

@@ -8,7 +8,7 @@ export function howRaised(flag: FlagPage): { rule: string; numbers: string } {
   const { evidence } = flag
   const value = (key: string) => {
     const number = evidence[key]
-    return typeof number === 'number' ? shownWithUnit(flag.attribute, number) : 'not known'
+    return typeof number === 'number' ? shownWithUnit(flag, number) : 'not known'
   }
   const side = evidence.side === 'lower' ? 'below' : 'above'
   switch (flag.rule) {

@@ -1,8 +1,8 @@
+import { attributeName } from '@/lib/reading/schema/attributes'
 import { heatWeight } from '@/components/marks/heat'
 import type { FlagPage } from '@/lib/flag/queries/one'
 import type { AgainstTrend } from '@/lib/flag/rules/against-trend'
 import { spokenDay } from '@/lib/study/rules/calendar'
-import { attributeName } from '@/lib/study/rules/finding'
 import { capital, shownValue, shownWithUnit } from '@/lib/study/rules/words'
 import { stationText } from '@/lib/flag/rules/list'
 import { instrumentNoun, whole } from './flag-words'
@@ -84,7 +84,7 @@ function Row({
   name: React.ReactNode
   isBar: boolean
 }) {
-  const value = shownWithUnit(row.attribute, row.value)
+  const value = shownWithUnit(row, row.value)
   const weight = row.isFlagged || row.isBeyond ? 'font-650' : ''
   return (
     <li className="flex min-h-[31px] items-center justify-between gap-4 text-15">
@@ -158,10 +158,11 @@ function reachOf(rows: AgainstTrend[]): number {
   return [6, 12, 18, 24, 30, 45].find((reach) => most <= reach) ?? 60
 }
 
-function allowed({ band, attribute, value }: AgainstTrend): string {
+function allowed(row: AgainstTrend): string {
+  const { band, value } = row
   const isLow = band?.lower !== null && band?.lower !== undefined && value < band.lower
   const edge = isLow ? band.lower : band?.upper
-  return typeof edge === 'number' ? `allowed ${isLow ? 'down ' : ''}to ${shownValue(attribute, edge)}` : ''
+  return typeof edge === 'number' ? `allowed ${isLow ? 'down ' : ''}to ${shownValue(row, edge)}` : ''
 }
 
 function signed(value: number): string {

@@ -4,7 +4,7 @@ import { Button } from '@/components/ui/button'
 import { Field } from '@/components/ui/field'
 import { Select } from '@/components/ui/select'
 import type { PlannedAttribute, Tolerance } from '@/lib/protocol/schema'
-import { attributes as known, attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { attributes as known, type AttributeKey, attributeName } from '@/lib/reading/schema/attributes'
 import { BandPreview } from './band-preview'
 import { NumberPart } from './number-part'
 import { ToleranceFields } from './tolerance-fields'
@@ -24,7 +24,7 @@ export function AttributeEditor({ attributes, onChange, fields }: Props) {
     <>
       <ul className="divide-y divide-hair border-b border-hair">
         {attributes.map((planned, index) => {
-          const { label } = attributeOf(planned.attribute)
+          const label = attributeName(planned.attribute)
           const error = Object.entries(fields).find(([path]) =>
             path.startsWith(`plan.attributes.${index}`),
           )?.[1]

@@ -1,7 +1,7 @@
 import { Ledger } from '@/components/ui/ledger'
 import { toleranceText } from '@/lib/protocol/rules/words'
 import type { PlannedAttribute } from '@/lib/protocol/schema'
-import { attributeOf } from '@/lib/reading/schema/attributes'
+import { attributeOf, attributeName } from '@/lib/reading/schema/attributes'
 import { viscosityFactor } from '@/lib/science/viscosity'
 import { shownValue } from '@/lib/study/rules/words'
 
@@ -16,7 +16,7 @@ export function AttributeList({ attributes }: { attributes: PlannedAttribute[] }
         {
           key: 'attribute',
           title: 'attribute',
-          cell: (row) => <b className="font-650">{attributeOf(row.attribute).label}</b>,
+          cell: (row) => <b className="font-650">{attributeName(row.attribute)}</b>,
         },
         { key: 'tolerance', title: 'may be', cell: toleranceText },
         {
@@ -26,7 +26,7 @@ export function AttributeList({ attributes }: { attributes: PlannedAttribute[] }
           from: 'tablet',
           cell: (row) => row.replicates,
         },
-        { key: 'jar', title: 'jar', from: 'tablet', cell: (row) => attributeOf(row.attribute).jar },
+        { key: 'jar', title: 'jar', from: 'tablet', cell: (row) => attributeOf(row.attribute, row).jar },
         {
           key: 'method',
           title: 'method',
@@ -36,7 +36,10 @@ export function AttributeList({ attributes }: { attributes: PlannedAttribute[] }
                 {row.method}
                 <span className="text-soft">
                   ,{' '}
-                  {shownValue('viscosity', viscosityFactor(row.viscosity.spindleConstant, row.viscosity.rpm))}{' '}
+                  {shownValue(
+                    attributeOf('viscosity'),
+                    viscosityFactor(row.viscosity.spindleConstant, row.viscosity.rpm),
+                  )}{' '}
                   mPa·s a %
                 </span>
               </>

@@ -15,7 +15,7 @@ const examples: Partial<Record<string, string>> = { ph: '5.5', viscosity: '60000
 export function BandPreview({ planned }: { planned: PlannedAttribute }) {
   const [typed, setTyped] = useState(examples[planned.attribute] ?? '0')
   if (planned.tolerance.kind === 'range') return null
-  const { label, unit } = attributeOf(planned.attribute)
+  const { label, unit } = attributeOf(planned.attribute, planned)
   return (
     <div className="mt-2 flex flex-wrap items-end gap-3 sm:ml-[132px]">
       <NumberField
@@ -31,10 +31,10 @@ export function BandPreview({ planned }: { planned: PlannedAttribute }) {
   )
 }
 
-function previewed({ attribute, tolerance }: PlannedAttribute, initial: number | null): string {
+function previewed(planned: PlannedAttribute, initial: number | null): string {
   if (initial === null) return 'told once an initial is given.'
   try {
-    return `${bandText(attribute, toleranceBand(tolerance, initial))}.`
+    return `${bandText(planned, toleranceBand(planned.tolerance, initial))}.`
   } catch (error) {
     if (error instanceof ScienceError) return 'nothing: the limits leave no room on this initial.'
     throw error

@@ -15,7 +15,7 @@ import { planFaults } from '@/lib/protocol/rules/faults'
 import { matrixed } from '@/lib/protocol/rules/matrixing'
 import { askedAt, weeksOfPlan } from '@/lib/protocol/rules/plan'
 import { outsideTests, protocolKeys, type PlannedStation, type ProtocolPlan } from '@/lib/protocol/schema'
-import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { type AttributeKey, attributeName } from '@/lib/reading/schema/attributes'
 import { AttributeEditor } from './attribute-editor'
 import { PlanGrid } from './plan-grid'
 import { NumberPart } from './number-part'
@@ -117,7 +117,7 @@ export function PlanEditor({ code, name: savedName, version, onLeave, onSaved }:
           value={reads ?? ''}
           options={plan.attributes.map(({ attribute }) => ({
             value: attribute,
-            label: `only ${attributeOf(attribute).label}`,
+            label: `only ${attributeName(attribute)}`,
           }))}
           onPick={(key) => setReads((key || undefined) as AttributeKey | undefined)}
           wrap="mb-3 w-[240px]"

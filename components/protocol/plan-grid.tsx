@@ -14,7 +14,7 @@ import {
   weeksOfPlan,
 } from '@/lib/protocol/rules/plan'
 import type { PlannedStation, ProtocolPlan } from '@/lib/protocol/schema'
-import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { type AttributeKey, attributeName } from '@/lib/reading/schema/attributes'
 
 type Props = {
   plan: ProtocolPlan
@@ -108,7 +108,7 @@ function Place({
   const label = [
     stationName(station, index),
     isPulled ? pullLabel(station, week, plan.endWeeks) : `week ${week}`,
-    ...(reads ? [attributeOf(reads).label] : []),
+    ...(reads ? [attributeName(reads)] : []),
   ].join(', ')
   if (reads && !isPulled) return null
   const drawing = (

@@ -2,7 +2,7 @@ import { planChanges } from '@/lib/protocol/rules/changes'
 import { askedAt, stationName } from '@/lib/protocol/rules/plan'
 import { cycleText } from '@/lib/protocol/rules/words'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
-import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { type AttributeKey, attributeName } from '@/lib/reading/schema/attributes'
 import { capital, listed } from '@/lib/study/rules/words'
 
 /** Cycles, and what is not read everywhere: what the grid of jars cannot show. */
@@ -33,7 +33,7 @@ function leftOutWords(plan: ProtocolPlan, attribute: AttributeKey): string[] {
     places.set(text, [...(places.get(text) ?? []), stationName(station, index)])
   })
   return [...places].map(
-    ([weeks, names]) => `${attributeOf(attribute).label} is not read in ${weeks} at ${names.join('; ')}.`,
+    ([weeks, names]) => `${attributeName(attribute)} is not read in ${weeks} at ${names.join('; ')}.`,
   )
 }
 

@@ -5,7 +5,7 @@ import { Field } from '@/components/ui/field'
 import { RadioGroup } from '@/components/ui/radio-group'
 import { matrixed, priceOf } from '@/lib/protocol/rules/matrixing'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
-import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { type AttributeKey, attributeName } from '@/lib/reading/schema/attributes'
 
 type Props = {
   plan: ProtocolPlan
@@ -34,7 +34,7 @@ export function ReadLess({ plan, onChange, fields }: Props) {
           {plan.attributes.map(({ attribute }) => (
             <Checkbox
               key={attribute}
-              label={attributeOf(attribute).label}
+              label={attributeName(attribute)}
               checked={chosen.includes(attribute)}
               onSet={(isOn) => pick(attribute, isOn)}
             />

@@ -19,7 +19,7 @@ import { newId } from '@/lib/db/id'
 import { ClientError, send } from '@/lib/http/fetcher'
 import { toleranceText } from '@/lib/protocol/rules/words'
 import type { Tolerance } from '@/lib/protocol/schema'
-import { attributeOf } from '@/lib/reading/schema/attributes'
+import { attributeName } from '@/lib/reading/schema/attributes'
 import type { StudyStationRow } from '@/lib/study/queries/head'
 import type { ShownStudy } from '@/lib/study/queries/sheet'
 import { degrees } from '@/lib/study/rules/finding'
@@ -146,7 +146,7 @@ export function AmendDialog({ study, stations, onClose }: Props) {
             value={attribute}
             options={study.attributes.map((one) => ({
               value: one.attribute,
-              label: `${attributeOf(one.attribute).label}, ${toleranceText(one)}`,
+              label: `${attributeName(one.attribute)}, ${toleranceText(one)}`,
             }))}
             onPick={(key) => {
               const picked = study.attributes.find((one) => one.attribute === key)!
@@ -158,7 +158,7 @@ export function AmendDialog({ study, stations, onClose }: Props) {
             <ToleranceFields tolerance={tolerance} onChange={setTolerance} />
           </div>
           <p className="text-15" aria-live="polite">
-            {attributeOf(attribute).label} may be {toleranceText({ ...planned, tolerance })}.
+            {attributeName(attribute)} may be {toleranceText({ ...planned, tolerance })}.
           </p>
         </>
       ) : null}

@@ -1,5 +1,5 @@
 import type { CurveInput, CurveSeries, TrendPoint } from '@/components/charts/curve-data'
-import { attributes, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { type AttributeKey, attributeOf, type Attribute } from '@/lib/reading/schema/attributes'
 import type { SeriesFinding } from '@/lib/science/series'
 import type { CurvesPage } from '@/lib/study/queries/curves'
 import { spokenDay } from '@/lib/study/rules/calendar'
@@ -10,26 +10,28 @@ type Series = CurvesPage['series'][number]
 /** One plot for each attribute of one batch; separation stands first, then what regression serves. */
 export function curveInputs(page: CurvesPage, batchId: string): CurveInput[] {
   const own = page.series.filter((series) => series.batchId === batchId)
-  return page.study.attributes.flatMap(({ attribute, method }) => {
+  return page.study.attributes.flatMap((planned) => {
+    const { attribute, method } = planned
     const series = own.filter((one) => one.attribute === attribute)
-    const known = attributes[attribute]
+    const known = attributeOf(attribute, planned)
     const [first] = series
-    if (!first || 'words' in known) return []
+    if (!first || known.words) return []
     const isThousand = attribute === 'viscosity' && first.finding.initial >= 10_000
     const scale = isThousand ? 1000 : 1
     return [
       {
         title: known.label,
+        attribute,
         unit: [isThousand ? 'thousand mPa·s' : (units[attribute] ?? known.unit), ...split(method)].filter(
           Boolean,
         ),
-        decimals: attribute === 'ph' ? 2 : attribute === 'viscosity' ? 0 : 1,
-        band: bandOf(first.finding, attribute, scale),
+        decimals: scale === 1 ? axisDecimals(known) : 0,
+        band: bandOf(first.finding, known, scale),
         series: [
-          ...besideSeries(page, batchId, attribute, scale),
+          ...besideSeries(page, batchId, known, scale),
           ...page.stations.toReversed().flatMap((station) => {
             const one = series.find((candidate) => candidate.studyStationId === station.id)
-            return one ? [seriesOf(one, station, attribute, scale)] : []
+            return one ? [seriesOf(one, station, known, scale)] : []
           }),
         ],
         notes: notesOf(series),
@@ -39,24 +41,19 @@ export function curveInputs(page: CurvesPage, batchId: string): CurveInput[] {
 }
 
 /** References of this study and the chosen batch of another one: their counted readings alone, on this study's time. */
-function besideSeries(
-  page: CurvesPage,
-  batchId: string,
-  attribute: AttributeKey,
-  scale: number,
-): CurveSeries[] {
+function besideSeries(page: CurvesPage, batchId: string, attribute: Attribute, scale: number): CurveSeries[] {
   const references = page.batches
     .filter((batch) => batch.isReference && batch.id !== batchId)
     .flatMap((batch) =>
       page.series
-        .filter((one) => one.batchId === batch.id && one.attribute === attribute)
+        .filter((one) => one.batchId === batch.id && one.attribute === attribute.key)
         .flatMap((one) => {
           const station = page.stations.find(({ id }) => id === one.studyStationId)
           return station ? [{ ...station, beside: batch.code, points: one.finding.points }] : []
         }),
     )
   const earlier = (page.beside?.series ?? [])
-    .filter((one) => one.attribute === attribute)
+    .filter((one) => one.attribute === attribute.key)
     .filter((one) =>
       page.stations.some(
         (station) =>
@@ -96,7 +93,7 @@ function split(method: string): string[] {
 function seriesOf(
   series: Series,
   station: CurvesPage['stations'][number],
-  attribute: AttributeKey,
+  attribute: Attribute,
   scale: number,
 ): CurveSeries {
   const { finding } = series
@@ -127,11 +124,11 @@ function seriesOf(
 function trendOf(
   { line, standing }: Series,
   station: CurvesPage['stations'][number],
-  attribute: AttributeKey,
+  attribute: Attribute,
   scale: number,
 ): TrendPoint[] | null {
   if (line.length === 0 || standing === 'untold') return null
-  if (attribute === 'separation' && standing !== 'leaning') return null
+  if (attribute.key === 'separation' && standing !== 'leaning') return null
   const until = Math.max(...station.timePoints)
   const isLeaning = standing === 'leaning'
   return line
@@ -144,16 +141,22 @@ function trendOf(
     }))
 }
 
+/** Figures of the axis; what is worth three figures has none behind the point from 100 on. */
+function axisDecimals({ key, decimals }: Attribute): number {
+  if (key === 'viscosity') return 0
+  return decimals === 'three figures' ? 1 : decimals
+}
+
 const units: Partial<Record<AttributeKey, string>> = {
   separation: 'percent of fill height',
   mass: 'percent',
 }
 
-function bandOf({ band, initial }: SeriesFinding, attribute: string, scale: number) {
+function bandOf({ band, initial }: SeriesFinding, attribute: Attribute, scale: number) {
   const { lower, upper } = band
   if (lower === null && upper === null) return null
   const shown = (value: number) => (scale === 1 ? shownValue(attribute, value) : (value / scale).toFixed(1))
-  const unit = scale === 1 && attributes[attribute as AttributeKey].unit === '%' ? ' %' : ''
+  const unit = scale === 1 && attribute.unit === '%' ? ' %' : ''
   const text =
     lower === null
       ? `allowed up to ${shown(upper!)}${unit}`

@@ -7,7 +7,7 @@ import { readDecimal } from '@/lib/number/rules'
 import { Section } from '@/components/ui/section'
 import { Select } from '@/components/ui/select'
 import type { PlannedAttribute, ProtocolPlan } from '@/lib/protocol/schema'
-import { attributeOf } from '@/lib/reading/schema/attributes'
+import { attributeOf, attributeName } from '@/lib/reading/schema/attributes'
 import { mean } from '@/lib/science/mean'
 import { viscosity } from '@/lib/science/viscosity'
 import { shownWithUnit } from '@/lib/study/rules/words'
@@ -36,7 +36,7 @@ export function InitialFields({ offer, draft, plan, set, fields }: Props) {
           <div key={planned.attribute} className="grid gap-3">
             <div className="flex flex-wrap items-end justify-between gap-3">
               <p>
-                <b className="font-650">{attributeOf(planned.attribute).label}</b>
+                <b className="font-650">{attributeName(planned.attribute)}</b>
                 <span className="block text-13 text-soft">{planned.method}</span>
               </p>
               <InstrumentChoice planned={planned} offer={offer} draft={draft} set={set} />
@@ -64,9 +64,13 @@ export function InitialFields({ offer, draft, plan, set, fields }: Props) {
                   return (
                     <NumberField
                       key={place}
-                      label={`${attributeOf(planned.attribute).label} of ${batch.code}${planned.replicates > 1 ? `, replicate ${place + 1}` : ''}`}
+                      label={`${attributeName(planned.attribute)} of ${batch.code}${planned.replicates > 1 ? `, replicate ${place + 1}` : ''}`}
                       value={texts[place] ?? ''}
-                      unit={planned.viscosity && draft.isTorque ? '%' : attributeOf(planned.attribute).unit}
+                      unit={
+                        planned.viscosity && draft.isTorque
+                          ? '%'
+                          : attributeOf(planned.attribute, planned).unit
+                      }
                       onText={(text) =>
                         set({
                           typed: {
@@ -123,7 +127,7 @@ function InstrumentChoice({
   if (instruments.length === 0) return null
   return (
     <Select
-      label={`Instrument for ${attributeOf(planned.attribute).label}`}
+      label={`Instrument for ${attributeName(planned.attribute)}`}
       hideLabel
       empty="Which instrument"
       value={draft.instrumentIds[planned.attribute] ?? ''}
@@ -142,7 +146,7 @@ function Computed({ planned, draft, texts }: { planned: PlannedAttribute; draft:
   const torquePercent = mean(torques)
   if (torquePercent <= 0) return null
   const { mPas } = viscosity({ torquePercent, ...planned.viscosity })
-  return <p className="pb-1.5 font-600">{shownWithUnit('viscosity', mPas)}</p>
+  return <p className="pb-1.5 font-600">{shownWithUnit(attributeOf('viscosity'), mPas)}</p>
 }
 
 /** The server names a reading by its place in what was sent. */

@@ -11,10 +11,9 @@ import { readDecimal } from '@/lib/number/rules'
 import { toast } from '@/components/ui/toast'
 import { newId } from '@/lib/db/id'
 import { ClientError, send } from '@/lib/http/fetcher'
-import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { attributeName, attributeOf } from '@/lib/reading/schema/attributes'
 import { readingKeys } from '@/lib/reading/schema/change'
 import type { ReadingChain } from '@/lib/study/queries/readings'
-import { attributeName } from '@/lib/study/rules/finding'
 
 type Reading = ReadingChain['current']
 type Props = { reading: Reading; isOwn: boolean; onDone: () => void }
@@ -77,7 +76,7 @@ function CorrectDialog({ reading, what, onDone, close }: DialogProps) {
   const [reason, setReason] = useState('')
   const act = useAct(onDone, close)
   const set = (key: string) => (text: string) => setValues((before) => ({ ...before, [key]: text }))
-  const { words } = attributeOf(reading.attribute as AttributeKey)
+  const { words } = attributeOf(reading.attribute, reading)
   return (
     <Dialog
       isOpen
@@ -137,7 +136,7 @@ const fieldNames: Record<string, string> = {
 
 /** The fields in which this reading was come by, filled with what stands. */
 function startOf({ attribute, detail, typed }: Reading): Record<string, string> {
-  if (attributeOf(attribute as AttributeKey).kind === 'layers') {
+  if (attributeOf(attribute, undefined).kind === 'layers') {
     return { topMm: String(detail.topMm ?? 0), bottomMm: String(detail.bottomMm ?? 0) }
   }
   if (detail.torquePercent !== undefined) return { torquePercent: typed }

@@ -1,9 +1,9 @@
+import { attributeName } from '@/lib/reading/schema/attributes'
 import type { SheetFlag, SheetProps, SheetRow } from '@/components/charts/sheet-layout'
 import type { StripAttribute } from '@/components/charts/cell-strip'
 import type { SheetPage, SheetShelf } from '@/lib/study/queries/sheet'
-import { attributeName, inSentence } from '@/lib/study/rules/finding'
+import { inSentence } from '@/lib/study/rules/finding'
 import { addDays, spokenDay } from '@/lib/study/rules/calendar'
-import { shownValue } from '@/lib/study/rules/words'
 
 /** One batch's shelves as the chart draws them. */
 export function sheetProps(sheet: SheetPage, batchId: string): SheetProps {
@@ -98,17 +98,19 @@ function flagOf(flag: SheetPage['flags'][number], shelves: SheetShelf[], sheet: 
 /** The picked cell's values as levels within their bands. */
 export function stripOf(shelf: SheetShelf, weeks: number): StripAttribute[] {
   const cell = shelf.cells.find((one) => one.weeks === weeks)
-  return (cell?.values ?? []).map(({ attribute, text, isOut, band, initial, last, now }) => ({
-    key: attribute,
-    name: attributeName(attribute),
-    text,
-    isOut,
-    lower: band.lower,
-    upper: band.upper,
-    initial,
-    last,
-    now,
-    ...(band.lower === null ? {} : { lowerText: shownValue(attribute, band.lower) }),
-    ...(band.upper === null ? {} : { upperText: shownValue(attribute, band.upper) }),
-  }))
+  return (cell?.values ?? []).map(
+    ({ attribute, text, isOut, band, lowerText, upperText, initial, last, now }) => ({
+      key: attribute,
+      name: attributeName(attribute),
+      text,
+      isOut,
+      lower: band.lower,
+      upper: band.upper,
+      initial,
+      last,
+      now,
+      ...(lowerText === null ? {} : { lowerText }),
+      ...(upperText === null ? {} : { upperText }),
+    }),
+  )
 }

@@ -2,7 +2,7 @@ import { readDecimal } from '@/lib/number/rules'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
 import { jarsOfPlan, stationName } from '@/lib/protocol/rules/plan'
 import type { ProtocolRow } from '@/lib/protocol/queries'
-import { startsAtZero } from '@/lib/reading/schema/attributes'
+import { startsAtZero, attributeOf } from '@/lib/reading/schema/attributes'
 import { jarsFromGrams } from '@/lib/science/jar-grams'
 import type { ReleasedBatch } from '@/lib/study/queries/batches'
 import type { LabWorkload } from '@/lib/study/queries/workload'
@@ -194,7 +194,10 @@ export type StartPlace = ReturnType<typeof placesOf>[number]
 /** Attributes whose initial is typed: where the band is told from it, or it is not nothing by definition. */
 export function initialAttributes(plan: ProtocolPlan) {
   return plan.attributes.filter(
-    ({ attribute, tolerance }) => tolerance.kind !== 'range' || !startsAtZero(attribute),
+    (planned) =>
+      planned.isInitialOnly ||
+      planned.tolerance.kind !== 'range' ||
+      !startsAtZero(attributeOf(planned.attribute, planned)),
   )
 }
 

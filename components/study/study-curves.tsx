@@ -6,7 +6,7 @@ import { Curves } from '@/components/charts/curves'
 import { Empty } from '@/components/ui/empty'
 import { LinkButton } from '@/components/ui/link-button'
 import { fetcher } from '@/lib/http/fetcher'
-import { attributes, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { type AttributeKey } from '@/lib/reading/schema/attributes'
 import type { CurvesPage } from '@/lib/study/queries/curves'
 import { studyKeys } from '@/lib/study/schema'
 import { curveName } from '@/components/charts/curve-geometry'
@@ -63,7 +63,7 @@ export function StudyCurves({ code, rights, batch, station, beside }: Props) {
             endWeeks={study.endWeeks}
             todayWeeks={page.todayWeeks}
             nameAs={(input, series, name) => {
-              const attribute = attributeKeyOf(input)
+              const attribute = input.attribute as AttributeKey | undefined
               return shown && attribute && !series.beside ? (
                 <SeriesDetails
                   code={code}
@@ -95,12 +95,6 @@ export function StudyCurves({ code, rights, batch, station, beside }: Props) {
       </div>
     </>
   )
-}
-
-/** A plot is titled with the label of its attribute. */
-function attributeKeyOf({ title }: CurveInput): AttributeKey | null {
-  const found = Object.values(attributes).find(({ label }) => label === title)
-  return found ? found.key : null
 }
 
 /** As high as the words and keys at its left need: title, small print, a line for each station, the table's link. */

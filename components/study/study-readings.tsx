@@ -1,5 +1,6 @@
 'use client'
 
+import { attributeName, attributeOf } from '@/lib/reading/schema/attributes'
 import { useRouter } from 'next/navigation'
 import type { ReactNode } from 'react'
 import { ListPages } from '@/components/list/list-pages'
@@ -11,7 +12,6 @@ import type { ListQuery } from '@/lib/list/schema'
 import { grouped } from '@/lib/number/rules'
 import type { ReadingChain, ReadingEntry, StudyReadings as Page } from '@/lib/study/queries/readings'
 import { dayIn, spokenDay } from '@/lib/study/rules/calendar'
-import { attributeName } from '@/lib/study/rules/finding'
 import { jarName, readingList } from '@/lib/study/rules/reading-list'
 import { shownWithUnit } from '@/lib/study/rules/words'
 import { ReadingActs } from './reading-acts'
@@ -160,7 +160,9 @@ function Cell({ of, entry, isCurrent, isAmended, timeZone }: CellProps) {
       return (
         <td className={`text-right whitespace-nowrap ${isCurrent ? 'font-600' : ''}`}>
           <span className={old}>
-            {entry.isVoid || entry.value === null ? 'void' : shownWithUnit(entry.attribute, entry.value)}
+            {entry.isVoid || entry.value === null
+              ? 'void'
+              : shownWithUnit(attributeOf(entry.attribute, entry), entry.value)}
           </span>
           {isCurrent && isAmended ? <span className="sr-only"> counts now</span> : null}
         </td>

@@ -4,6 +4,7 @@ import { attributeOf, type Attribute, type AttributeKey } from '@/lib/reading/sc
 import { toleranceBand } from '@/lib/science/band'
 import { ScienceError } from '@/lib/science/guard'
 import type { Band, Standing } from '@/lib/science/series'
+import type { Written } from '@/lib/study/rules/words'
 import { dayIn } from '@/lib/study/rules/calendar'
 import type { CurrentSeries, InitialMean, LastReading } from './queries/values'
 
@@ -70,12 +71,17 @@ export function plannedFor(
   return askedAt(jar.plan, jar.plan.stations[jar.position], jar.timeWeeks, kind)
 }
 
+/** How a value of this jar is written, also of what it was once asked and is no more. */
+export function writtenAs(fields: BenchField[], key: string): Written {
+  return fields.find((field) => field.attribute === key) ?? attributeOf(key, undefined)
+}
+
 export function fieldsOf(jar: JarOfBench, values: Values): BenchField[] {
   return plannedFor(jar).map((planned) => fieldOf(planned, jar, values))
 }
 
 function fieldOf(planned: PlannedAttribute, jar: JarOfBench, values: Values): BenchField {
-  const { key, ...attribute } = attributeOf(planned.attribute)
+  const { key, ...attribute } = attributeOf(planned.attribute, planned)
   const isHere = (row: { studyId: string; batchId: string; attribute: string }) =>
     row.studyId === jar.studyId && row.batchId === jar.batchId && row.attribute === key
   const series = values.series.find((row) => isHere(row) && row.studyStationId === jar.studyStationId)

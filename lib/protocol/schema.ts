@@ -1,5 +1,6 @@
 import { z } from '@/lib/http/zod'
 import { attributeKey } from '@/lib/reading/schema/attributes'
+import { isOwn, ownAttribute } from '@/lib/reading/schema/own'
 
 /** The three tolerance kinds of lib/science: absolute limits, % of the initial, units from the initial. */
 export const tolerance = z
@@ -25,8 +26,14 @@ export const tolerance = z
   )
 export type Tolerance = z.infer<typeof tolerance>
 
-export const plannedAttribute = z.object({
+export const dropletMeasures = ['d50v', 'd32', 'd43', 'd10'] as const
+
+const plannedOfAny = z.object({
   attribute: attributeKey,
+  /** What an attribute of the protocol's own is; its name is in the key. */
+  own: ownAttribute.optional(),
+  /** Read once, before the study starts, and at no pull. */
+  isInitialOnly: z.literal(true).optional(),
   tolerance,
   replicates: z.number().int().min(1).max(5),
   /** Said as it is done: "direct", "extract 1 to 10, 30 minutes", "T-bar C, 10 rpm, 30 s, descending". */
@@ -39,7 +46,23 @@ export const plannedAttribute = z.object({
       rpm: z.number().positive(),
     })
     .optional(),
+  /** For separation: the least layer in mm that the ruler tells. Where nothing is said, a millimetre. */
+  rulerMm: z.number().positive().max(5, 'A ruler that tells only 5 mm tells no separation.').optional(),
+  /** For droplets: which of the diameters the band is about; the volume median where nothing is said. */
+  dropletMeasure: z.enum(dropletMeasures).optional(),
+  centrifuge: z
+    .object({
+      rpm: z.number().positive().max(100_000),
+      radiusMm: z.number().positive().max(1000),
+      minutes: z.number().positive().max(1440),
+    })
+    .optional(),
 })
+
+export const plannedAttribute = plannedOfAny.refine(
+  ({ attribute, own }) => isOwn(attribute) === (own !== undefined),
+  { path: ['own'], message: 'Say what this attribute of your own is: a number with its unit, or a scale.' },
+)
 export type PlannedAttribute = z.infer<typeof plannedAttribute>
 
 /** One turn of a freeze-thaw station, as the protocol asks for it; how many there are is said by the time points. */

@@ -1,7 +1,6 @@
 import { TZDate } from '@date-fns/tz'
 import { format } from 'date-fns'
 import { choice, day, describeList } from '@/lib/list/schema'
-import { thousands } from '@/lib/science/methods/thousands'
 import type { ReportRow } from './queries'
 
 /** 2 Mar 2026, 16:42:07 +01:00 in the lab's zone: the form in which a signature's time is shown. */
@@ -21,12 +20,6 @@ export function dayText(iso: string): string {
 /** 2 Mar, where the year goes without saying. */
 export function shortDay(iso: string): string {
   return dayText(iso).replace(/ \d{4}$/, '')
-}
-
-/** pH 2 decimals, viscosity 3 significant figures, percent 1 decimal. */
-export function figure(attribute: string, value: number): string {
-  if (attribute === 'viscosity') return thousands(String(Number(value.toPrecision(3))))
-  return value.toFixed(attribute === 'ph' ? 2 : 1).replace(/^-/, '\u2212')
 }
 
 export function weekText(weeks: number): string {

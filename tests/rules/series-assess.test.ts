@@ -1,3 +1,4 @@
+import { attributeOf } from '@/lib/reading/schema/attributes'
 import { describe, expect, it } from 'vitest'
 import type { Frame, FrameReading } from '@/lib/series/queries/frame'
 import { assessStudy } from '@/lib/series/rules/assess'
@@ -115,10 +116,10 @@ describe('what a series is made of', () => {
       ],
     }
     const packed = { ...lean, lines: [water, oil] }
-    expect(repeatabilitySd('separation', lean, 0, 50)).toBe(2)
-    expect(repeatabilitySd('viscosity', lean, 6500, 50)).toBeCloseTo(195)
-    expect(repeatabilitySd('viscosity', packed, 180_000, 50)).toBeCloseTo(14_400)
-    expect(repeatabilitySd('ph', packed, 5.5, 50)).toBe(0.1)
+    expect(repeatabilitySd({ attribute: 'separation' }, lean, 0, 50)).toBe(2)
+    expect(repeatabilitySd({ attribute: 'viscosity' }, lean, 6500, 50)).toBeCloseTo(195)
+    expect(repeatabilitySd({ attribute: 'viscosity' }, packed, 180_000, 50)).toBeCloseTo(14_400)
+    expect(repeatabilitySd({ attribute: 'ph' }, packed, 5.5, 50)).toBe(0.1)
   })
 })
 
@@ -220,7 +221,7 @@ describe('sentences', () => {
       at: 4,
       evidence: { mean: 2, edge: 1, side: 'upper', by: 1 },
     }
-    expect(ruleSentence(rule, context, 'look')).toBe(
+    expect(ruleSentence(rule, context, attributeOf('look'))).toBe(
       'Look at 45 °C is "changed", beyond the band. Look at a second jar before anyone worries.',
     )
   })

@@ -1,3 +1,4 @@
+import { attributeOf } from '@/lib/reading/schema/attributes'
 import { describe, expect, it } from 'vitest'
 import { readyMadePlan } from '@/lib/protocol/rules/ready-made'
 import { addDays, dayIn, spokenDay, weeksBetween } from '@/lib/study/rules/calendar'
@@ -196,13 +197,13 @@ describe('the finding', () => {
 
 describe('values as they are written', () => {
   it('have the figures that their attribute is worth', () => {
-    expect(shownValue('ph', 5.6)).toBe('5.60')
-    expect(shownValue('viscosity', 41_620)).toBe('41\u2009600')
-    expect(shownValue('viscosity', 6512)).toBe('6\u2009510')
-    expect(shownValue('viscosity', 98.76)).toBe('98.8')
-    expect(shownWithUnit('viscosity', 180_000)).toBe('180\u2009000 mPa·s')
-    expect(shownValue('mass', -0.43)).toBe('−0.4')
-    expect(shownValue('separation', -0.01)).toBe('0.0')
-    expect(shownValue('look', 1)).toBe('slightly changed')
+    expect(shownValue(attributeOf('ph'), 5.6)).toBe('5.60')
+    expect(shownValue(attributeOf('viscosity'), 41_620)).toBe('41\u2009600')
+    expect(shownValue(attributeOf('viscosity'), 6512)).toBe('6\u2009510')
+    expect(shownValue(attributeOf('viscosity'), 98.76)).toBe('98.8')
+    expect(shownWithUnit(attributeOf('viscosity'), 180_000)).toBe('180\u2009000 mPa·s')
+    expect(shownValue(attributeOf('mass'), -0.43)).toBe('−0.4')
+    expect(shownValue(attributeOf('separation'), -0.01)).toBe('0.0')
+    expect(shownValue(attributeOf('look'), 1)).toBe('slightly changed')
   })
 })

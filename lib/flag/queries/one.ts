@@ -1,10 +1,11 @@
+import { ownOf } from '@/lib/study/queries/own'
 import { sql } from 'kysely'
 import type { Actor } from '@/lib/auth/actor'
 import type { Db, Trx } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
 import { namedJar } from '@/lib/jar/rules'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
-import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { attributeOf } from '@/lib/reading/schema/attributes'
 import type { SeriesFinding } from '@/lib/science/series'
 import { stationWhenRead } from '@/lib/station/queries/stood'
 import { dayIn } from '@/lib/study/rules/calendar'
@@ -110,7 +111,7 @@ export async function getFlag(db: Db, _actor: Actor, number: number) {
   if (!flag) throw refuse.notFound('There is no flag with this number.')
   const series = await listSeriesThere(db, flag)
   const { plan, ...rest } = flag
-  const attribute = attributeOf(flag.attribute as AttributeKey)
+  const attribute = attributeOf(flag.attribute, plan)
   const station = flag.studyStationId
     ? { temperatureC: flag.temperatureC, isFreezeThaw: flag.isFreezeThaw ?? false }
     : null
@@ -119,6 +120,7 @@ export async function getFlag(db: Db, _actor: Actor, number: number) {
     label: attribute.label,
     unit: attribute.unit,
     decimals: attribute.decimals,
+    words: attribute.words ?? null,
     method: plan.attributes.find((planned) => planned.attribute === flag.attribute)?.method ?? '',
     jarName: flag.jarCode && namedJar(flag.jarCode, station),
     readOn: flag.measuredAt && dayIn(flag.zone, flag.measuredAt),
@@ -179,6 +181,7 @@ function readingsWithTrend(db: Db) {
       'series.standing',
     ])
     .select((eb) => eb.ref('series.finding').$castTo<SeriesFinding | null>().as('finding'))
+    .select(ownOf('study', 'r'))
     .where('r.isVoid', '=', false)
     .where(({ not, exists, selectFrom }) =>
       not(

@@ -1,4 +1,4 @@
-import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { attributeOf, type AttributeKey, type Attribute } from '@/lib/reading/schema/attributes'
 import { isBeyondBand } from '@/lib/science/band'
 import { mean } from '@/lib/science/mean'
 import { weeksSince } from '@/lib/science/months'
@@ -12,6 +12,8 @@ export type AgainstTrend = {
   attribute: AttributeKey
   label: string
   unit: string
+  decimals: Attribute['decimals']
+  words: Attribute['words']
   value: number
   /** Where its own trend was that day; the latest counted value before it where there is no trend. */
   expected: number | null
@@ -59,7 +61,7 @@ function compare(
   value: number,
   flag: { studyCode: string; batchId: string; studyStationId: string | null; attribute: string },
 ): AgainstTrend {
-  const attribute = attributeOf(row.attribute as AttributeKey)
+  const attribute = attributeOf(row.attribute, row)
   const { finding } = row
   const weeks = weeksSince(row.startedAt, row.measuredAt)
   const before = finding?.points.findLast((point) => point.counted && point.time < weeks - 0.1)
@@ -70,9 +72,11 @@ function compare(
   const band = finding?.band ?? null
   return {
     readingIds: group.map((one) => one.id),
-    attribute: attribute.key as AttributeKey,
+    attribute: attribute.key,
     label: attribute.label,
     unit: attribute.unit,
+    decimals: attribute.decimals,
+    words: attribute.words,
     value,
     expected,
     difference,

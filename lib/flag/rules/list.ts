@@ -1,5 +1,6 @@
+import { attributeName } from '@/lib/reading/schema/attributes'
 import { choice, day, describeList } from '@/lib/list/schema'
-import { attributeName, degrees } from '@/lib/study/rules/finding'
+import { degrees } from '@/lib/study/rules/finding'
 import type { FlagLine } from '../queries/list'
 import { flagStates } from '../schema'
 import { needsQuality } from './closing'

@@ -1,3 +1,4 @@
+import { attributeOf } from '@/lib/reading/schema/attributes'
 import { ownRules, type Assessed } from '@/lib/series/rules/assess'
 import type { EntryDoubt, Frame } from '@/lib/series/queries/frame'
 import { commonShift, type ShiftedDay } from '@/lib/series/rules/shifted-day'
@@ -53,7 +54,7 @@ function fromRules(frame: Frame, { unit, finding }: Assessed): WantedFlag[] {
     level: rule.level as FlagLevel,
     readingId: rule.readingId ?? null,
     atWeeks: rule.at,
-    sentence: ruleSentence(rule, context, unit.attribute),
+    sentence: ruleSentence(rule, context, attributeOf(unit.attribute, frame.study.plan)),
     evidence: rule.evidence,
   }))
 }

@@ -1,4 +1,4 @@
-import { attributes, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { attributes, attributeName } from '@/lib/reading/schema/attributes'
 import { worstOf } from '@/lib/study/rules/cells'
 import { degrees, timeWords } from '@/lib/study/rules/finding'
 import { capital, counted, listed, numberWord } from '@/lib/study/rules/words'
@@ -48,7 +48,7 @@ export function shelvesOf(formulaIds: readonly string[], series: readonly Compar
         ...{ key, kind, temperatureC: kind === 'temperature' ? temperatureC : null },
         rows: measured.map((attribute) => ({
           attribute,
-          label: attributes[attribute as AttributeKey]?.label ?? attribute,
+          label: attributeName(attribute),
           places: formulaIds.map((id) =>
             placeOf(own.filter((one) => one.formulaId === id && one.attribute === attribute)),
           ),

@@ -1,7 +1,6 @@
 import type { PlannedStation, ProtocolPlan } from '@/lib/protocol/schema'
-import { attributeOf } from '@/lib/reading/schema/attributes'
 import { listed } from '@/lib/study/rules/words'
-import { stationName } from './plan'
+import { pulledFor, stationName } from './plan'
 
 /** Where a batch stands among those that take turns; null for one that is measured every time. */
 export type Turn = { place: number; of: number } | null
@@ -15,7 +14,7 @@ const rounds = { half: 2, 'two thirds': 3 } as const
  */
 export function planOfBatch(plan: ProtocolPlan, turn: Turn): ProtocolPlan {
   if (!plan.batchMatrixing || turn === null || turn.of < 2) return plan
-  const measured = plan.attributes.filter(({ attribute }) => attributeOf(attribute).jar === 'measuring')
+  const measured = pulledFor(plan, 'measuring')
   const stations = plan.stations.map((station, index) => {
     const weeks = restingWeeks(plan, index, turn.place)
     if (weeks.length === 0) return station

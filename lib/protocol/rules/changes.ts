@@ -1,5 +1,5 @@
 import type { PlannedAttribute, PlannedStation, ProtocolPlan } from '@/lib/protocol/schema'
-import { attributeOf } from '@/lib/reading/schema/attributes'
+import { attributeName } from '@/lib/reading/schema/attributes'
 import { askedAt, stationName } from './plan'
 import { cycleText, toleranceText } from './words'
 
@@ -41,7 +41,7 @@ function oneStation(
         askedAt(plan, station, week).some((one) => one.attribute === attribute)
       const dropped = both.filter((week) => reads(before, was, week) && !reads(after, is, week))
       const taken = both.filter((week) => !reads(before, was, week) && reads(after, is, week))
-      const { label } = attributeOf(attribute)
+      const label = attributeName(attribute)
       return [
         ...(dropped.length > 0 ? [`${name}: ${label} is no longer read in ${weeksText(dropped)}.`] : []),
         ...(taken.length > 0 ? [`${name}: ${label} is also read in ${weeksText(taken)}.`] : []),
@@ -64,9 +64,9 @@ function attributeChanges(before: ProtocolPlan, after: ProtocolPlan): string[] {
   const find = (plan: ProtocolPlan, key: string) => plan.attributes.find((one) => one.attribute === key)
   const gone = before.attributes
     .filter(({ attribute }) => !find(after, attribute))
-    .map(({ attribute }) => `${attributeOf(attribute).label} is no longer measured.`)
+    .map(({ attribute }) => `${attributeName(attribute)} is no longer measured.`)
   const changed = after.attributes.flatMap((planned) => {
-    const { label } = attributeOf(planned.attribute)
+    const label = attributeName(planned.attribute)
     const was = find(before, planned.attribute)
     if (!was) return [`${label} is measured: ${toleranceText(planned)}.`]
     return [
@@ -85,7 +85,7 @@ function wholeChanges(before: ProtocolPlan, after: ProtocolPlan): string[] {
   const outside = ({ setAside = [] }: ProtocolPlan) =>
     setAside.map(({ what, jars }) => `${jars} for ${what}`).join(', ')
   const names = ({ matrixing }: ProtocolPlan) =>
-    matrixing?.attributes.map((key) => attributeOf(key).label).join(', ')
+    matrixing?.attributes.map((key) => attributeName(key)).join(', ')
   const brackets = ({ bracketing }: ProtocolPlan) =>
     bracketing && `${bracketing.factor}, ${bracketing.low} and ${bracketing.high}`
   return [

@@ -1,5 +1,5 @@
 import type { PlannedStation, ProtocolPlan } from '@/lib/protocol/schema'
-import { attributeOf } from '@/lib/reading/schema/attributes'
+import { attributeName } from '@/lib/reading/schema/attributes'
 import { askedAt, stationName, variantOf } from './plan'
 
 /** What is wrong in a plan, and where. A draft may still be unfinished; what contradicts itself is not kept. */
@@ -104,7 +104,7 @@ function matrixedEdge(plan: ProtocolPlan, station: PlannedStation, name: string)
     ({ attribute, week }) => edges.includes(week) && plan.matrixing?.attributes.includes(attribute),
   )
   if (!cell) return null
-  return `${attributeOf(cell.attribute).label} is matrixed, so it is read at the first and the last time point of ${name}. Put week ${cell.week} back.`
+  return `${attributeName(cell.attribute)} is matrixed, so it is read at the first and the last time point of ${name}. Put week ${cell.week} back.`
 }
 
 /** Two stations of a plan may share one of the lab's only where their jars differ. */

@@ -1,5 +1,5 @@
 import type { PlannedStation, ProtocolPlan } from '@/lib/protocol/schema'
-import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { type AttributeKey, attributeName } from '@/lib/reading/schema/attributes'
 import { batchMatrixingPrice } from './batch-matrixing'
 import { stationName } from './plan'
 
@@ -36,7 +36,7 @@ export function priceOf(plan: ProtocolPlan): string[] {
 }
 
 function matrixingPrice(plan: ProtocolPlan, attributes: AttributeKey[]): string[] {
-  const names = attributes.map((key) => attributeOf(key).label)
+  const names = attributes.map((key) => attributeName(key))
   const few = plan.stations.flatMap((station, index) => {
     const read = Math.min(...attributes.map((attribute) => readTimes(station, attribute)))
     return read + 1 < 5 ? [stationName(station, index)] : []

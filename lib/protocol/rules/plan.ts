@@ -36,6 +36,17 @@ export function setAsideJars(plan: Pick<ProtocolPlan, 'setAside'>): number {
   return (plan.setAside ?? []).reduce((sum, { jars }) => sum + jars, 0)
 }
 
+/** What jars are pulled for, of one kind or of any; what is read only before the start is at no pull. */
+export function pulledFor(
+  plan: Pick<ProtocolPlan, 'attributes'>,
+  jar?: 'watch' | 'measuring',
+): PlannedAttribute[] {
+  return plan.attributes.filter(
+    (planned) =>
+      !planned.isInitialOnly && (jar === undefined || attributeOf(planned.attribute, planned).jar === jar),
+  )
+}
+
 /** Attributes that one kind of jar is asked for at one time point, in the plan's order. */
 export function askedAt(
   plan: Pick<ProtocolPlan, 'attributes'>,
@@ -43,9 +54,8 @@ export function askedAt(
   week: number,
   jar?: 'watch' | 'measuring',
 ): PlannedAttribute[] {
-  return plan.attributes.filter(
+  return pulledFor(plan, jar).filter(
     ({ attribute }) =>
-      (jar === undefined || attributeOf(attribute).jar === jar) &&
       !(station?.leftOut ?? []).some((cell) => cell.week === week && cell.attribute === attribute),
   )
 }
@@ -56,7 +66,7 @@ export function askedWeeks(
   station: PlannedStation,
   jar: 'watch' | 'measuring',
 ): number[] {
-  if (!plan.attributes.some(({ attribute }) => attributeOf(attribute).jar === jar)) return station.timePoints
+  if (pulledFor(plan, jar).length === 0) return station.timePoints
   return station.timePoints.filter((week) => askedAt(plan, station, week, jar).length > 0)
 }
 

@@ -3,13 +3,13 @@ import { attributeOf } from '@/lib/reading/schema/attributes'
 import type { Band } from '@/lib/science/series'
 import { shownValue } from '@/lib/study/rules/words'
 
+type Named = Pick<PlannedAttribute, 'attribute' | 'own'>
+
 /** How far an attribute may move, as one says it. */
-export function toleranceText({
-  attribute,
-  tolerance,
-}: Pick<PlannedAttribute, 'attribute' | 'tolerance'>): string {
-  const { unit } = attributeOf(attribute)
-  if (tolerance.kind === 'range') return limitsText(attribute, tolerance.lower, tolerance.upper)
+export function toleranceText(planned: Pick<PlannedAttribute, 'attribute' | 'own' | 'tolerance'>): string {
+  const { tolerance } = planned
+  const { unit } = attributeOf(planned.attribute, planned)
+  if (tolerance.kind === 'range') return limitsText(planned, tolerance.lower, tolerance.upper)
   const what =
     tolerance.kind === 'percent' ? ' % of the initial' : `${unit ? ` ${unit}` : ''} from the initial`
   const { below, above } = tolerance
@@ -21,12 +21,13 @@ export function toleranceText({
 }
 
 /** A band with its unit: what the tolerance comes to on one initial. */
-export function bandText(attribute: PlannedAttribute['attribute'], { lower, upper }: Band): string {
-  return limitsText(attribute, lower ?? undefined, upper ?? undefined)
+export function bandText(planned: Named, { lower, upper }: Band): string {
+  return limitsText(planned, lower ?? undefined, upper ?? undefined)
 }
 
-function limitsText(attribute: PlannedAttribute['attribute'], lower?: number, upper?: number): string {
-  const { unit, words } = attributeOf(attribute)
+function limitsText(planned: Named, lower?: number, upper?: number): string {
+  const attribute = attributeOf(planned.attribute, planned)
+  const { unit, words } = attribute
   const shown = (value: number) => shownValue(attribute, value)
   const end = unit && !words ? ` ${unit}` : ''
   if (lower === undefined) return `at most ${shown(upper!)}${end}`

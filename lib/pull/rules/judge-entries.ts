@@ -1,5 +1,5 @@
 import { AppError } from '@/lib/http/errors'
-import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { type AttributeKey, attributeName } from '@/lib/reading/schema/attributes'
 import { conditionDoubts, cycleDoubts, valueDoubts, type EntryDoubt } from '@/lib/reading/rules/entry-doubts'
 import { weeksSince } from '@/lib/science/months'
 import type { Frame } from '@/lib/series/queries/frame'
@@ -78,7 +78,7 @@ export function judgeEntries(
 /** Asks once, about everything at a time: what is unlikely, and what is missing. */
 export function askFirst(questions: Question[], missing: readonly string[]): void {
   const open = missing.map((key): Question => {
-    const label = attributeOf(key as AttributeKey).label
+    const label = attributeName(key)
     return {
       field: `missing.${key}`,
       attribute: key,

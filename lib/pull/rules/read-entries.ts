@@ -1,7 +1,7 @@
 import { refuse } from '@/lib/http/errors'
 import type { PlannedAttribute } from '@/lib/protocol/schema'
 import { plannedFor } from '@/lib/bench/rules'
-import { attributeOf } from '@/lib/reading/schema/attributes'
+import { attributeName } from '@/lib/reading/schema/attributes'
 import type { Entry } from '@/lib/reading/schema/entry'
 import { ImpossibleEntry, valueOf, type EntryValue } from '@/lib/reading/rules/value'
 import type { Frame } from '@/lib/series/queries/frame'
@@ -25,7 +25,7 @@ export function readEntries(jar: PullJar, frame: Frame, entries: readonly Entry[
   const read = entries.flatMap((entry, index): ReadEntry[] => {
     const path = `readings.${index}`
     const asked = planned.find((one) => one.attribute === entry.attribute)
-    const label = attributeOf(entry.attribute).label
+    const label = attributeName(entry.attribute)
     const name = `${entry.attribute} ${entry.replicate}`
     if (!asked) {
       fields[`${path}.typed`] = `${label} is not asked of this jar. Leave it out.`

@@ -124,7 +124,13 @@ function compare(jar: PullJar, frame: Frame, key: AttributeKey, entries: readonl
   const batch = frame.study.batches.find((one) => one.id === jar.batchId)
   const initial = initialOf(frame, jar.batchId, key)
   if (mine.length === 0 || theirs.length === 0 || !batch || initial.length === 0) return []
-  const s = repeatabilitySd(key, batch, mean(initial), frame.study.plan.fillHeightMm)
+  const planned = frame.study.plan.attributes.find((one) => one.attribute === key)
+  const s = repeatabilitySd(
+    { attribute: key, own: planned?.own },
+    batch,
+    mean(initial),
+    frame.study.plan.fillHeightMm,
+  )
   const [a, b] = [mine, theirs].map((values) => ({
     time: 0,
     mean: mean(values),

@@ -9,7 +9,7 @@ import { readTyped } from '../schema/typed'
 
 /** What must be known of the jar and the protocol to make a value of what was typed. */
 export type ValueContext = {
-  planned: Pick<PlannedAttribute, 'viscosity'> | null
+  planned: Pick<PlannedAttribute, 'own' | 'viscosity' | 'rulerMm' | 'dropletMeasure' | 'centrifuge'> | null
   jar: { tareG: number | null; grossG: number | null; fillHeightMm: number | null }
   /** Of the instrument that was used. */
   spindles: { name: string; constant: number }[]
@@ -32,7 +32,7 @@ export class ImpossibleEntry extends Error {
 
 /** The value of what was typed; throws an ImpossibleEntry where no jar could have given it. */
 export function valueOf(entry: TypedEntry, context: ValueContext): EntryValue {
-  const attribute = attributeOf(entry.attribute)
+  const attribute = attributeOf(entry.attribute, context.planned ?? {})
   const temperature = entry.detail.sampleTemperatureC
   if (temperature !== undefined && (temperature < -30 || temperature > 120)) {
     throw new ImpossibleEntry(
@@ -49,6 +49,11 @@ export function valueOf(entry: TypedEntry, context: ValueContext): EntryValue {
       return entry.detail.torquePercent === undefined
         ? plain(entry, attribute, context)
         : torqueValue(entry, context)
+    case 'type':
+    case 'colour':
+    case 'droplets':
+    case 'centrifuge':
+      return plain(entry, attribute, context)
     case 'number':
       return entry.detail.grossG === undefined ? plain(entry, attribute, context) : massValue(entry, context)
   }

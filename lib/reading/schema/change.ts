@@ -21,7 +21,7 @@ export const readingAddress = z.object({ id: z.uuid() })
 
 export const readingFilter = z.object({
   study: z.string().trim().min(1).max(40),
-  attribute: z.string().max(40).optional(),
+  attribute: z.string().max(44).optional(),
 })
 
 export const readingKeys = {

@@ -7,8 +7,9 @@ import { Curve, firstCurve } from '@/lib/report/document/curve'
 import { mono } from '@/lib/report/document/fonts'
 import { style } from '@/lib/report/document/page-frame'
 import { Shelves } from '@/lib/report/document/shelves'
-import { dayText, figure, hashGroups, instantText } from '@/lib/report/rules'
-import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { dayText, hashGroups, instantText } from '@/lib/report/rules'
+import { shownWithUnit } from '@/lib/study/rules/words'
+import { attributeOf } from '@/lib/reading/schema/attributes'
 import type { ReportInput } from '@/lib/report/document/report'
 import type { AttributeEvidence, CaseContent } from '@/lib/shelf-case/rules/content'
 
@@ -80,9 +81,7 @@ function AttributeRow({ a, isLimiting }: { a: AttributeEvidence; isLimiting: boo
     <View style={[style.row, isLimiting ? style.bold : {}, { alignItems: 'center' }]} wrap={false}>
       <Text style={{ width: 92 }}>{a.label}</Text>
       <Text style={{ width: 128 }}>{a.limit}</Text>
-      <Text style={{ width: 62, textAlign: 'right' }}>
-        {a.worst ? worstText(a.attribute, a.unit, a.worst.value) : ''}
-      </Text>
+      <Text style={{ width: 62, textAlign: 'right' }}>{a.worst ? worstText(a, a.worst.value) : ''}</Text>
       <View style={{ width: 122, paddingLeft: 14 }}>
         {a.worst ? (
           <Svg width={104} height={10} viewBox="0 0 104 10">
@@ -111,9 +110,8 @@ function AttributeRow({ a, isLimiting }: { a: AttributeEvidence; isLimiting: boo
   )
 }
 
-function worstText(key: string, unit: string, value: number): string {
-  const words = attributeOf(key as AttributeKey).words
-  return words ? (words[value] ?? figure(key, value)) : `${figure(key, value)} ${unit}`.trim()
+function worstText(evidence: AttributeEvidence, value: number): string {
+  return shownWithUnit(attributeOf(evidence.attribute, evidence), value)
 }
 
 export function Signatures({ content, contentSha256, signatures }: ReportInput) {

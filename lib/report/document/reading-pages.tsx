@@ -1,7 +1,8 @@
 import { Text, View } from '@react-pdf/renderer'
 import { style } from '@/lib/report/document/page-frame'
-import { figure, minuteText, weekText } from '@/lib/report/rules'
-import { attributes, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { minuteText, weekText } from '@/lib/report/rules'
+import { shownValue } from '@/lib/study/rules/words'
+import { attributeOf } from '@/lib/reading/schema/attributes'
 import type { CaseContent, ReadingEvidence } from '@/lib/shelf-case/rules/content'
 
 /** Every reading as typed, those that were corrected or voided struck through with their reason. */
@@ -26,15 +27,16 @@ export function ReadingPages({ content }: { content: CaseContent }) {
           <Text style={{ flex: 1 }}>by</Text>
         </View>
         {content.readings.map((r, i) => (
-          <Row key={i} r={r} zone={content.lab.timeZone} />
+          <Row key={i} r={r} content={content} />
         ))}
       </View>
     </>
   )
 }
 
-function Row({ r, zone }: { r: ReadingEvidence; zone: string }) {
-  const attribute = attributes[r.attribute as AttributeKey]
+function Row({ r, content }: { r: ReadingEvidence; content: CaseContent }) {
+  const own = content.attributes.find((one) => one.attribute === r.attribute)
+  const attribute = attributeOf(r.attribute, own)
   const isGone = r.state === 'superseded' || r.state === 'void'
   const struck = isGone ? ({ textDecoration: 'line-through' } as const) : {}
   return (
@@ -43,12 +45,12 @@ function Row({ r, zone }: { r: ReadingEvidence; zone: string }) {
       <Text style={{ width: 78 }}>{r.station}</Text>
       <Text style={{ width: 42 }}>{r.jar}</Text>
       <Text style={{ width: 48 }}>{r.weeks === 0 ? 'initial' : weekText(r.weeks)}</Text>
-      <Text style={{ width: 66 }}>{attribute?.label ?? r.attribute}</Text>
+      <Text style={{ width: 66 }}>{attribute.label}</Text>
       <Text style={[{ width: 52, textAlign: 'right' }, struck]}>{r.typed}</Text>
       <Text style={[{ width: 58, textAlign: 'right' }, struck]}>
-        {r.word ?? (r.value === null ? '' : figure(r.attribute, r.value))}
+        {r.word ?? (r.value === null ? '' : shownValue(attribute, r.value))}
       </Text>
-      <Text style={{ width: 80, paddingLeft: 10 }}>{minuteText(r.measuredAt, zone)}</Text>
+      <Text style={{ width: 80, paddingLeft: 10 }}>{minuteText(r.measuredAt, content.lab.timeZone)}</Text>
       <Text style={{ flex: 1 }}>
         {r.by}
         {r.state === 'counts' ? '' : `; ${r.state}`}

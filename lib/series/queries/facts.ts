@@ -1,3 +1,4 @@
+import { attributeOf } from '@/lib/reading/schema/attributes'
 import type { Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
@@ -33,7 +34,7 @@ export async function getSeriesFacts(
   if (!found || !kept) throw refuse.notFound('This study has no such series.')
   const { station, batch } = found.unit
   return seriesFacts({
-    attribute,
+    attribute: attributeOf(attribute, frame.study.plan),
     station: station.name,
     batch: batch.code,
     input: found.input,

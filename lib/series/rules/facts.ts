@@ -1,4 +1,4 @@
-import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { type Attribute } from '@/lib/reading/schema/attributes'
 import { driftMethod, ruleMethods } from '@/lib/science/methods/drift'
 import { exactly, factsOf, type FigureFacts } from '@/lib/science/methods/method'
 import type { SeriesFinding, SeriesInput, Tolerance } from '@/lib/science/series'
@@ -6,7 +6,7 @@ import type { DriftCalculation } from '@/lib/shelf-case/rules/content'
 import { shownWithUnit } from '@/lib/study/rules/words'
 
 type Of = {
-  attribute: AttributeKey
+  attribute: Attribute
   station: string
   batch: string
   input: SeriesInput
@@ -25,10 +25,9 @@ export function seriesFacts({
   calculation,
   when,
 }: Of): FigureFacts {
-  const { label, unit, kind } = attributeOf(attribute)
-  const isWord = kind === 'word'
+  const { label, unit, words } = attribute
   const value = (number: number) =>
-    isWord ? `${shownWithUnit(attribute, number)} (${exactly(number)})` : exactly(number, unit)
+    words ? `${shownWithUnit(attribute, number)} (${exactly(number)})` : exactly(number, unit)
   const { band, leavesAtLow: low, leavesAtHigh: high } = finding
   const counted = finding.points.filter((point) => point.counted)
   return factsOf(driftMethod, {

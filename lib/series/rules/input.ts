@@ -1,4 +1,6 @@
 import { attributeOf, startsAtZero, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { pulledFor } from '@/lib/protocol/rules/plan'
+import type { PlannedAttribute } from '@/lib/protocol/schema'
 import { mean } from '@/lib/science/mean'
 import { weeksSince } from '@/lib/science/months'
 import { phaseFraction } from '@/lib/science/phase-fraction'
@@ -34,11 +36,11 @@ export function seriesUnits(
 ): Unit[] {
   const units: Unit[] = []
   for (const batch of frame.study.batches) {
-    for (const planned of frame.study.plan.attributes) {
+    for (const planned of pulledFor(frame.study.plan)) {
       if (only && !only.has(planned.attribute)) continue
       const initial = initialOf(frame, batch.id, planned.attribute)
       if (initial.length === 0) continue
-      const s = repeatabilitySd(planned.attribute, batch, mean(initial), frame.study.plan.fillHeightMm)
+      const s = repeatabilitySd(planned, batch, mean(initial), frame.study.plan.fillHeightMm)
       for (const station of frame.study.stations) {
         const jars = jarReadings(frame, batch.id, station.id, planned.attribute)
         units.push({
@@ -68,14 +70,14 @@ export function seriesUnits(
 
 /** SD of one replicate in the unit of the attribute; the method of a high internal phase scatters more. */
 export function repeatabilitySd(
-  key: AttributeKey,
+  planned: Pick<PlannedAttribute, 'attribute' | 'own'>,
   batch: FrameBatch,
   initial: number,
   fillHeightMm: number,
 ): number {
   // A ruler reads a millimetre, whatever the jar's height.
-  if (key === 'separation') return rulerPercent(fillHeightMm)
-  const { kind, sd, highInternalPhaseSd } = attributeOf(key).repeatability
+  if (planned.attribute === 'separation') return rulerPercent(fillHeightMm)
+  const { kind, sd, highInternalPhaseSd } = attributeOf(planned.attribute, planned).repeatability
   const ofMethod = isHighInternalPhase(batch) ? highInternalPhaseSd : sd
   return kind === 'relative' ? ofMethod * Math.abs(initial) : ofMethod
 }
@@ -90,7 +92,7 @@ export function initialOf(frame: Frame, batchId: string, attribute: AttributeKey
   )
   const initial = own.filter((r) => r.studyStationId === null)
   if (initial.length > 0) return initial.map((r) => r.value!)
-  if (startsAtZero(attribute)) return [0]
+  if (startsAtZero(attributeOf(attribute, frame.study.plan))) return [0]
   const planned = frame.study.plan.attributes.find((one) => one.attribute === attribute)
   const [first] = own
   if (planned?.tolerance.kind !== 'range' || !first) return []

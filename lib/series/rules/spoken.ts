@@ -1,4 +1,4 @@
-import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { attributeOf, type AttributeKey, type Attribute } from '@/lib/reading/schema/attributes'
 import { shownWithUnit, withVariant } from '@/lib/study/rules/words'
 import { sentenceOf, type SentenceContext } from '@/lib/science/sentence'
 import type { RuleFinding } from '@/lib/science/series'
@@ -16,15 +16,16 @@ export function stationWords(
 
 /** How the rules' sentences name a series of this study. */
 export function sentenceContext(
-  study: Pick<Frame['study'], 'startedAt' | 'zone'>,
+  study: Pick<Frame['study'], 'startedAt' | 'zone' | 'plan'>,
   station: FrameStation,
   attribute: AttributeKey,
 ): SentenceContext {
+  const known = attributeOf(attribute, study.plan)
   const startedOn = dayIn(study.zone, study.startedAt)
   return {
     station: stationWords(station),
     attribute: inSentence(attribute),
-    value: (value) => shownWithUnit(attribute, value),
+    value: (value) => shownWithUnit(known, value),
     when: (time) =>
       `week ${Math.round(time)} (${spokenDay(addDays(startedOn, Math.round(time * 7)), false)})`,
     isRelative: attribute === 'viscosity',
@@ -32,10 +33,9 @@ export function sentenceContext(
 }
 
 /** What a rule found in this study's words. A step between words is no distance, so it is not told as one. */
-export function ruleSentence(rule: RuleFinding, context: SentenceContext, attribute: AttributeKey): string {
-  const { label, kind } = attributeOf(attribute)
+export function ruleSentence(rule: RuleFinding, context: SentenceContext, attribute: Attribute): string {
   const { mean, repeat } = rule.evidence
   const isSingle = rule.rule === 'out' && rule.level === 'doubt' && typeof repeat !== 'number'
-  if (kind !== 'word' || !isSingle || typeof mean !== 'number') return sentenceOf(rule, context)
-  return `${label} at ${context.station} is "${context.value(mean)}", beyond the band. Look at a second jar before anyone worries.`
+  if (!attribute.words || !isSingle || typeof mean !== 'number') return sentenceOf(rule, context)
+  return `${attribute.label} at ${context.station} is "${context.value(mean)}", beyond the band. Look at a second jar before anyone worries.`
 }

@@ -28,7 +28,7 @@ export function attributeEvidence(
   batches: BatchSeries[],
   cap: number,
 ): AttributeEvidence {
-  const attribute = attributeOf(planned.attribute)
+  const attribute = attributeOf(planned.attribute, planned)
   const observed = batches.map((b) => ({ batch: b.batch, months: lastPassedMonths(b.finding) }))
   const least = observed.reduce<(typeof observed)[number] | null>(
     (min, b) => (min === null || b.months < min.months ? b : min),
@@ -38,6 +38,7 @@ export function attributeEvidence(
     attribute: attribute.key,
     label: attribute.label,
     unit: attribute.unit,
+    ...(planned.own ? { own: planned.own } : {}),
     limit: limitText(planned, attribute.unit),
     n: batches.reduce((sum, b) => sum + b.observations.length, 0),
     worst: worstOf(batches),
@@ -126,7 +127,7 @@ export function regressionInput(
 
 function limitText(planned: PlannedAttribute, unit: string): string {
   const t = planned.tolerance
-  const words = attributeOf(planned.attribute).words
+  const { words } = attributeOf(planned.attribute, planned)
   if (words && t.kind === 'range' && t.upper !== undefined) return `at most ${words[t.upper] ?? t.upper}`
   const signed = (n: number) => String(n).replace('-', '\u2212')
   const withUnit = (n: number) => (unit ? `${signed(n)} ${unit}` : signed(n))

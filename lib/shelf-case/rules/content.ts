@@ -1,3 +1,4 @@
+import type { OwnAttribute } from '@/lib/reading/schema/own'
 import type { assessSeries } from '@/lib/science/drift'
 import type { extrapolationCap } from '@/lib/science/extrapolation-cap'
 import type { mkt } from '@/lib/science/mkt'
@@ -72,6 +73,8 @@ export type AttributeEvidence = {
   attribute: string
   label: string
   unit: string
+  /** What an attribute of the protocol's own is. */
+  own?: OwnAttribute
   limit: string
   n: number
   basis: 'regression' | 'observed'

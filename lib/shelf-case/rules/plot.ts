@@ -1,4 +1,5 @@
-import { figure } from '@/lib/report/rules'
+import { attributeOf } from '@/lib/reading/schema/attributes'
+import { shownValue } from '@/lib/study/rules/words'
 import { shelfLifeLines } from '@/lib/science/shelf-life-lines'
 import { fromScale } from '@/lib/science/shelf-life-scale'
 import type { AttributeEvidence } from '@/lib/shelf-case/rules/content'
@@ -28,7 +29,8 @@ export function regressionView(evidence: AttributeEvidence, upTo: number): Regre
   const deciding = output.limitingBatch ?? input.batches[0]?.name
   const samples = (values: number[] | undefined) =>
     (values ?? []).map((y, i): Sample => ({ t: at[i] ?? 0, y: back(y) }))
-  const label = (y: number) => (scale === 'log share' ? y.toFixed(0) : figure(evidence.attribute, y))
+  const label = (y: number) =>
+    scale === 'log share' ? y.toFixed(0) : shownValue(attributeOf(evidence.attribute, evidence), y)
   return {
     label,
     unit: scale === 'log share' ? '% of each batch’s own initial' : evidence.unit,

@@ -1,4 +1,4 @@
-import { attributes, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { attributeName } from '@/lib/reading/schema/attributes'
 import type { Computed } from '@/lib/shelf-case/rules/build'
 
 type Facts = { state: string; proposedMonths: number | null; storageStatement: string; kind: string }
@@ -19,7 +19,7 @@ export function caseHeadline(
   const months = facts.proposedMonths ?? 0
   const limiting = content.attributes.find((a) => a.attribute === content.limitingAttribute)
   const name = (key: string) => {
-    const label = attributes[key as AttributeKey]?.label ?? key
+    const label = attributeName(key)
     return label === 'pH' ? label : label.toLowerCase()
   }
   const carries = limiting

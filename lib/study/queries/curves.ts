@@ -35,6 +35,7 @@ export async function getCurves(db: Db, actor: Actor, code: string, beside = '')
     offers: await listBesideOffers(db, actor, study.id),
     todayWeeks: study.state === 'running' ? weeksBetween(study.startedOn, study.today) : null,
     finding: curvesFinding({
+      plan: study.plan,
       study,
       stations,
       batches: batches.filter((batch) => !batch.isReference),

@@ -1,7 +1,7 @@
 import { sql, type RawBuilder, type SqlBool } from 'kysely'
 import { isClientOnly, type Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
-import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { attributeName } from '@/lib/reading/schema/attributes'
 import { cellsOf } from '@/lib/study/rules/cells'
 import { weeksBetween } from '@/lib/study/rules/calendar'
 import {
@@ -124,7 +124,7 @@ async function ledgerRows(db: Db, actor: Actor, ids: string[]) {
       worst: shelf.series
         ? {
             attribute: shelf.series.attribute,
-            label: attributeOf(shelf.series.attribute as AttributeKey).label,
+            label: attributeName(shelf.series.attribute),
             used: shelf.series.used,
             latest: shelf.series.latestValue,
             leavesAtWeeks: shelf.series.leavesAtWeeks,
@@ -140,6 +140,8 @@ async function ledgerRows(db: Db, actor: Actor, ids: string[]) {
               ...own,
               today: study.today,
               fillHeightMm: study.fillHeightMm,
+              // The ledger draws jars and writes no values.
+              plan: { attributes: [] },
             }).map(({ weeks, state, posture, topPercent, bottomPercent }) => ({
               weeks,
               state,

@@ -5,10 +5,11 @@ import { listChoices } from '@/lib/list/queries/choices'
 import { pageOf } from '@/lib/list/queries/page'
 import { likeTyped, naturally, onDays, type Source } from '@/lib/list/queries/source'
 import type { ListQuery } from '@/lib/list/schema'
-import { attributes } from '@/lib/reading/schema/attributes'
+import { attributeName, attributes } from '@/lib/reading/schema/attributes'
+import { ownKeyOf } from '@/lib/reading/schema/own'
 import { stationWhenRead } from '@/lib/station/queries/stood'
-import { attributeName } from '@/lib/study/rules/finding'
 import { getStudyHead, listStudyBatches } from './head'
+import { ownOf } from './own'
 import { headOf } from './sheet'
 import type { ReadingDetail } from './parts'
 
@@ -85,7 +86,7 @@ const isChanged: RawBuilder<SqlBool> = sql<SqlBool>`(reading.supersedes_id is no
 
 /** The key of what the filter calls by its name. */
 function attributeNamed(name: string): string {
-  return Object.keys(attributes).find((key) => attributeName(key) === name) ?? name
+  return Object.keys(attributes).find((key) => attributeName(key) === name) ?? ownKeyOf(name) ?? name
 }
 
 async function countReadings(db: Db, studyId: string) {
@@ -101,6 +102,7 @@ async function entriesOf(db: Db, ids: string[]) {
     .selectFrom('reading')
     .innerJoin('person', 'person.id', 'reading.recordedBy')
     .innerJoin('batch', 'batch.id', 'reading.batchId')
+    .innerJoin('study', 'study.id', 'reading.studyId')
     .leftJoin('studyStation', 'studyStation.id', 'reading.studyStationId')
     .leftJoin('station', (join) => join.on('station.id', '=', stationWhenRead('reading', 'studyStation')))
     .leftJoin('pullJar', 'pullJar.id', 'reading.pullJarId')
@@ -136,6 +138,7 @@ async function entriesOf(db: Db, ids: string[]) {
       eb.ref('reading.detail').$castTo<ReadingDetail>().as('detail'),
       eb.ref('reading.doubts').$castTo<{ reason: string; sentence: string }[]>().as('doubts'),
     ])
+    .select(ownOf('study', 'reading'))
     .select(
       sql<boolean>`exists (select from reading newer where newer.supersedes_id = reading.id)`.as(
         'isSuperseded',

@@ -29,7 +29,7 @@ export async function getSheet(db: Db, actor: Actor, code: string) {
   const readings = await listCurrentReadings(db, study.id)
   const means = await listStationMeans(db, study.id)
   const { fillHeightMm } = study.plan
-  const shown = { pullJars, readings, series, today: study.today, fillHeightMm }
+  const shown = { pullJars, readings, series, today: study.today, fillHeightMm, plan: study.plan }
   return {
     study: headOf(study),
     batches,

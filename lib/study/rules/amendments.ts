@@ -3,7 +3,7 @@ import { stationName } from '@/lib/protocol/rules/plan'
 import { bandText, toleranceText } from '@/lib/protocol/rules/words'
 import type { PlannedAttribute, PlannedStation, ProtocolPlan, Tolerance } from '@/lib/protocol/schema'
 import { refuse } from '@/lib/http/errors'
-import { attributeOf } from '@/lib/reading/schema/attributes'
+import { attributeName, attributeOf } from '@/lib/reading/schema/attributes'
 import { isBeyondBand, toleranceBand } from '@/lib/science/band'
 import { ScienceError } from '@/lib/science/guard'
 import { nominalDay, spokenDay } from './calendar'
@@ -110,7 +110,7 @@ export function withTolerance(
   tolerance: Tolerance,
   initials: Initial[],
 ): { plan: ProtocolPlan; sentence: string } {
-  const { label } = attributeOf(attribute)
+  const label = attributeName(attribute)
   const planned = plan.attributes.find((one) => one.attribute === attribute)
   if (!planned) throw refuse.conflict(`${label} is not measured in this study, so it has no tolerance.`)
   const next = { ...planned, tolerance }
@@ -125,7 +125,7 @@ export function withTolerance(
     const band = bandOn(tolerance, value)
     if (!isBeyondBand(band, value)) continue
     throw refuse.conflict(
-      `The initial of ${batch} is ${shownWithUnit(attribute, value)}, outside ${bandText(attribute, band)}. A band holds its own initial; widen it.`,
+      `The initial of ${batch} is ${shownWithUnit(attributeOf(attribute, planned), value)}, outside ${bandText(planned, band)}. A band holds its own initial; widen it.`,
       { kind: 'initial', batch },
     )
   }

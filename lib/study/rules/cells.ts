@@ -1,3 +1,4 @@
+import { attributeOf, type Describing } from '@/lib/reading/schema/attributes'
 import { isBeyondBand } from '@/lib/science/band'
 import { mean } from '@/lib/science/mean'
 import { separation } from '@/lib/science/separation'
@@ -62,6 +63,8 @@ export type CellValue = {
   text: string
   isOut: boolean
   band: Band
+  lowerText: string | null
+  upperText: string | null
   initial: number | null
   last: number | null
   now: number | null
@@ -73,7 +76,7 @@ const worse: Standing[] = ['untold', 'steady', 'leaning', 'out']
 export function cellsOf(
   batchId: string,
   stationId: string,
-  input: { pullJars: PullJar[]; readings: Reading[]; series: Series[]; today: string; fillHeightMm: number },
+  input: Omit<Own, 'batchId' | 'stationId'> & { pullJars: PullJar[]; series: Series[] },
 ): Cell[] {
   const own = { batchId, stationId, ...input }
   const series = input.series.filter((one) => one.batchId === batchId && one.studyStationId === stationId)
@@ -87,7 +90,15 @@ export function cellsOf(
   return cells
 }
 
-type Own = { batchId: string; stationId: string; readings: Reading[]; today: string; fillHeightMm: number }
+type Own = {
+  batchId: string
+  stationId: string
+  readings: Reading[]
+  today: string
+  fillHeightMm: number
+  /** Where attributes of the protocol's own are described. */
+  plan: Describing
+}
 
 function initialCell(own: Own, series: Series[]): Cell {
   return {
@@ -96,7 +107,7 @@ function initialCell(own: Own, series: Series[]): Cell {
     pullLabel: 'initial',
     dueOn: '',
     state: 'read',
-    label: shownValue('separation', 0),
+    label: shownValue(attributeOf('separation'), 0),
     posture: 'upright',
     topPercent: 0,
     bottomPercent: 0,
@@ -104,7 +115,7 @@ function initialCell(own: Own, series: Series[]): Cell {
     code: null,
     readBy: own.readings.find((r) => r.batchId === own.batchId && r.studyStationId === null)?.readBy ?? null,
     values: series.map(({ attribute, finding }) => ({
-      ...valueOf(attribute, finding, finding.initial),
+      ...valueOf(attribute, own.plan, finding, finding.initial),
       initial: finding.initial,
       last: null,
     })),
@@ -122,7 +133,7 @@ function pullCell(jars: PullJar[], own: Own, series: Series[], before: Cell): Ce
     const now = shownOf(readings, attribute)
     const last = before.values.find((value) => value.attribute === attribute)
     return {
-      ...valueOf(attribute, finding, now),
+      ...valueOf(attribute, own.plan, finding, now),
       initial: finding.initial,
       last: last?.now ?? last?.last ?? null,
     }
@@ -154,7 +165,7 @@ function stateOf(jars: PullJar[], readings: Reading[], today: string): CellState
 }
 
 function labelOf(state: CellState, separation: number | null, pull: PullJar, today: string): string {
-  if (state === 'read') return separation === null ? '' : shownValue('separation', separation)
+  if (state === 'read') return separation === null ? '' : shownValue(attributeOf('separation'), separation)
   if (state === 'due') return pull.windowTo < today ? 'late' : 'due'
   return state === 'planned' ? '' : state
 }
@@ -195,10 +206,14 @@ export function worstOf(standings: Standing[]): Standing {
   )
 }
 
-function valueOf(attribute: string, finding: SeriesFinding, now: number | null) {
+function valueOf(key: string, plan: Describing, finding: SeriesFinding, now: number | null) {
+  const attribute = attributeOf(key, plan)
+  const edge = (value: number | null) => (value === null ? null : shownValue(attribute, value))
   return {
-    attribute,
+    attribute: key,
     text: now === null ? 'not read' : shownWithUnit(attribute, now),
+    lowerText: edge(finding.band.lower),
+    upperText: edge(finding.band.upper),
     isOut: now !== null && isBeyondBand(finding.band, now),
     band: finding.band,
     now,

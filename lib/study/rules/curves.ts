@@ -1,7 +1,8 @@
+import { attributeOf, type Describing } from '@/lib/reading/schema/attributes'
 import type { SeriesFinding, Standing } from '@/lib/science/series'
 import { addDays, spokenDay } from './calendar'
 import { degrees, inSentence, type Phrase } from './finding'
-import { capital, counted, isWorded, withVariant } from './words'
+import { capital, counted, withVariant } from './words'
 
 type Series = {
   studyStationId: string
@@ -19,13 +20,14 @@ type Station = { id: string; kind: string; temperatureC: number | null; variant?
 /** What the curves say that the sheet does not: the day on which a trend leaves its band, and how sure that is. */
 export function curvesFinding(input: {
   study: { startedOn: string; today: string }
+  plan: Describing
   stations: Station[]
   batches: { id: string }[]
   series: Series[]
 }): { headline: Phrase[]; sentence: string } {
   const { study } = input
   // Words against the initial have no curve.
-  const series = input.series.filter(({ attribute }) => !isWorded(attribute))
+  const series = input.series.filter(({ attribute }) => !attributeOf(attribute, input.plan).words)
   const day = (weeks: number, withYear = true) =>
     spokenDay(addDays(study.startedOn, Math.round(weeks * 7)), withYear)
   const leaning = series

@@ -1,4 +1,4 @@
-import { attributes, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { attributeName } from '@/lib/reading/schema/attributes'
 import type { Standing } from '@/lib/science/series'
 import { addDays, spokenDay } from './calendar'
 import { capital, counted, listed, numberWord, withVariant } from './words'
@@ -246,14 +246,10 @@ function todaysJars({ due, done }: { due: number; done: number }): string {
   return `${numberWord(done)} of today's ${numberWord(due)} jars ${done === 1 ? 'is' : 'are'} in`
 }
 
-export function attributeName(attribute: string): string {
-  return attributes[attribute as AttributeKey]?.label ?? attribute
-}
-
 /** "pH" keeps its letters; the others are plain words. */
 export function inSentence(attribute: string): string {
   const label = attributeName(attribute)
-  return label === 'pH' ? label : label.toLowerCase()
+  return /^.?\p{Lu}/u.test(label.slice(1)) ? label : label.charAt(0).toLowerCase() + label.slice(1)
 }
 
 export function degrees(temperatureC: number | null): string {

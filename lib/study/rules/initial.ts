@@ -1,6 +1,6 @@
 import { refuse } from '@/lib/http/errors'
 import type { PlannedAttribute } from '@/lib/protocol/schema'
-import { attributeOf } from '@/lib/reading/schema/attributes'
+import { attributeOf, attributeName } from '@/lib/reading/schema/attributes'
 import { computed } from '@/lib/reading/rules/value'
 import { readTyped } from '@/lib/reading/schema/typed'
 import { isBeyondBand, toleranceBand } from '@/lib/science/band'
@@ -58,7 +58,7 @@ function refuseMissing(
   given: InitialReading[],
 ) {
   if (attribute.tolerance.kind === 'range') return
-  const { label } = attributeOf(attribute.attribute)
+  const label = attributeName(attribute.attribute)
   const readings = given.filter((one) => one.batchId === batch.id && one.attribute === attribute.attribute)
   if (readings.length === 0) {
     throw refuse.invalid(
@@ -83,7 +83,7 @@ function rowOf(
   place: number,
   index: number,
 ): InitialRow {
-  const attribute = attributeOf(planned.attribute)
+  const attribute = attributeOf(planned.attribute, planned)
   const path = `initialReadings.${index}.typed.${place}`
   const wordAt = attribute.words?.indexOf(text.toLowerCase()) ?? -1
   const typed = wordAt === -1 ? readTyped(text) : wordAt
@@ -147,13 +147,13 @@ function refuseOutside(
   const band = toleranceBand(planned.tolerance, initial)
   if (!isBeyondBand(band, initial)) return
   throw refuse.invalid(
-    `The initial ${inSentence(planned.attribute)} of ${batch.code} is ${shownValue(planned.attribute, initial)}, outside its own band (${bandText(planned, band)}). Correct the reading, or the tolerance in the protocol.`,
+    `The initial ${inSentence(planned.attribute)} of ${batch.code} is ${shownValue(attributeOf(planned.attribute, planned), initial)}, outside its own band (${bandText(planned, band)}). Correct the reading, or the tolerance in the protocol.`,
     { [`initialReadings.${index}.typed.0`]: 'Outside its own band.' },
   )
 }
 
 function bandText(planned: PlannedAttribute, { lower, upper }: Band): string {
-  const shown = (value: number) => shownValue(planned.attribute, value)
+  const shown = (value: number) => shownValue(attributeOf(planned.attribute, planned), value)
   if (lower === null) return `at most ${shown(upper!)}`
   return upper === null ? `at least ${shown(lower)}` : `${shown(lower)} to ${shown(upper)}`
 }

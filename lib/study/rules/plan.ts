@@ -1,7 +1,6 @@
 import { matrixed } from '@/lib/protocol/rules/matrixing'
-import { askedWeeks, jarsOfPlan, weeksOfPlan } from '@/lib/protocol/rules/plan'
+import { askedWeeks, jarsOfPlan, pulledFor, weeksOfPlan } from '@/lib/protocol/rules/plan'
 import type { PlannedStation, ProtocolPlan } from '@/lib/protocol/schema'
-import { attributeOf } from '@/lib/reading/schema/attributes'
 import { fillFromGrams } from '@/lib/science/jar-grams'
 import type { StudyAdjustments } from '@/lib/study/schema'
 
@@ -65,9 +64,8 @@ function filledHeight({ fillHeightMm, fillG: usualG }: ProtocolPlan, fillG: numb
 function everySecond(plan: ProtocolPlan, station: PlannedStation): PlannedStation {
   const opened = askedWeeks(plan, station, 'measuring')
   const weeks = opened.slice(1, -1).filter((_, index) => index % 2 === 0)
-  const isLooked =
-    station.watchJars > 0 && plan.attributes.some((one) => attributeOf(one.attribute).jar === 'watch')
-  const measured = plan.attributes.filter(({ attribute }) => attributeOf(attribute).jar === 'measuring')
+  const isLooked = station.watchJars > 0 && pulledFor(plan, 'watch').length > 0
+  const measured = pulledFor(plan, 'measuring')
   if (!isLooked) {
     // Cycles and legs are counted, so none of them can be left out.
     if (station.kind !== 'temperature') return station

@@ -1,8 +1,7 @@
 import { namedJar } from '@/lib/jar/rules'
 import { choice, day, describeList } from '@/lib/list/schema'
-import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { attributeName, attributeOf } from '@/lib/reading/schema/attributes'
 import type { ReadingEntry } from '../queries/readings'
-import { attributeName } from './finding'
 
 /** A line is one entry: a correction and what it superseded are lines of their own, so that a file hides nothing either. */
 export const readingList = describeList<ReadingEntry>()({
@@ -34,7 +33,7 @@ export const readingList = describeList<ReadingEntry>()({
       key: 'unit',
       title: 'unit',
       isExtra: true,
-      value: (entry) => attributeOf(entry.attribute as AttributeKey).unit,
+      value: (entry) => attributeOf(entry.attribute, entry).unit,
     },
     {
       key: 'replicate',

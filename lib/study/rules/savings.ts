@@ -1,4 +1,4 @@
-import { askedWeeks, stationName } from '@/lib/protocol/rules/plan'
+import { askedWeeks, pulledFor, stationName } from '@/lib/protocol/rules/plan'
 import type { PlannedStation, ProtocolPlan } from '@/lib/protocol/schema'
 import { attributeOf } from '@/lib/reading/schema/attributes'
 import { boundWidening } from '@/lib/science/bound-width'
@@ -183,14 +183,14 @@ function fewerTimes(plan: ProtocolPlan, station: PlannedStation, position: numbe
   const times = [0, ...askedWeeks(plan, station, 'measuring')]
   const kept = [0, ...askedWeeks(left, left.stations[position]!, 'measuring')]
   if (station.measuringJarsPerPull === 0 || kept.length === times.length) return null
-  const measured = plan.attributes.filter(({ attribute }) => attributeOf(attribute).jar === 'measuring')
+  const measured = pulledFor(plan, 'measuring')
   const what =
     measured.length > 0 ? listed(measured.map(({ attribute }) => inSentence(attribute))) : 'measure'
   const later = Math.max(
     ...times.filter((time) => !kept.includes(time)).map((time) => kept.find((one) => one > time)! - time),
   )
   const isTrend =
-    station.kind === 'temperature' && measured.some(({ attribute }) => attributeOf(attribute).isGradual)
+    station.kind === 'temperature' && measured.some((one) => attributeOf(one.attribute, one).isGradual)
   const widening =
     isTrend && kept.length >= 3
       ? { times, kept, at: plan.endWeeks, percent: boundWidening(times, kept, plan.endWeeks) }

@@ -1,4 +1,4 @@
-import { attributes, type AttributeKey } from '@/lib/reading/schema/attributes'
+import type { Attribute } from '@/lib/reading/schema/attributes'
 import { thousands } from '@/lib/science/methods/thousands'
 
 const small = [
@@ -40,24 +40,23 @@ export function listed(items: string[]): string {
   return items.length < 2 ? (items[0] ?? '') : `${items.slice(0, -1).join(', ')} and ${items.at(-1)}`
 }
 
+/** What a value is written by: an attribute, or whatever carries as much of one. */
+export type Written = {
+  unit: string
+  decimals: Attribute['decimals']
+  words?: readonly string[] | null | undefined
+}
+
 /** A value with the figures its attribute is worth, and a true minus; without its unit. */
-export function shownValue(attribute: string, value: number): string {
-  const known = attributes[attribute as AttributeKey]
-  if (!known) return String(value)
-  if ('words' in known) return known.words[Math.round(value)] ?? String(value)
-  const text = known.decimals === 'three figures' ? threeFigures(value) : value.toFixed(known.decimals)
+export function shownValue({ decimals, words }: Written, value: number): string {
+  if (words) return words[Math.round(value)] ?? String(value)
+  const text = decimals === 'three figures' ? threeFigures(value) : value.toFixed(decimals)
   return thousands(text.replace(/^-(0\.0*)$/, '$1').replace('-', '−'))
 }
 
-export function shownWithUnit(attribute: string, value: number): string {
-  const known = attributes[attribute as AttributeKey]
+export function shownWithUnit(attribute: Written, value: number): string {
   const shown = shownValue(attribute, value)
-  return known?.unit && !('words' in known) ? `${shown} ${known.unit}` : shown
-}
-
-/** Read in words against the initial, so it has neither a curve nor a distance. */
-export function isWorded(attribute: string): boolean {
-  return attributes[attribute as AttributeKey]?.kind === 'word'
+  return attribute.unit && !attribute.words ? `${shown} ${attribute.unit}` : shown
 }
 
 function threeFigures(value: number): string {

@@ -1,5 +1,5 @@
+import { attributeName, attributeOf } from '@/lib/reading/schema/attributes'
 import { minuteText } from '@/lib/report/rules'
-import { attributeName } from '@/lib/study/rules/finding'
 import { shownWithUnit } from '@/lib/study/rules/words'
 import { spokenDay } from '@/lib/study/rules/calendar'
 import { fieldUnit, fieldWord } from './words'
@@ -58,7 +58,7 @@ function shown(field: string, value: unknown, row: Row, zone: string): string | 
   if (value === null || value === undefined || value === '') return null
   if (field === 'attribute' && typeof value === 'string') return attributeName(value)
   if (field === 'value' && typeof value === 'number' && typeof row['attribute'] === 'string')
-    return shownWithUnit(row['attribute'], value)
+    return shownWithUnit(attributeOf(row['attribute'], undefined), value)
   if (typeof value === 'boolean') return value ? 'yes' : 'no'
   if (typeof value === 'number') return `${numberText(value)}${fieldUnit(field)}`
   if (typeof value === 'string') return stringText(field, value, zone)
