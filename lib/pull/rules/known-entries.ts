@@ -1,6 +1,6 @@
 import type { Actor } from '@/lib/auth/actor'
 import { refuse } from '@/lib/http/errors'
-import { attributeOf, type AttributeKey } from '@/lib/reading/schema/attributes'
+import { attributeName } from '@/lib/reading/schema/attributes'
 import type { JarToLog } from '@/lib/reading/schema/entry'
 import type { PullJar } from '../queries/pull-jar'
 
@@ -17,7 +17,7 @@ export function isKeptBefore(jar: PullJar, actor: Actor, input: JarToLog): boole
     }
     const sent = input.readings.find((one) => one.id === kept.id)!
     if (sent.typed === kept.typed) continue
-    const label = attributeOf(kept.attribute as AttributeKey).label
+    const label = attributeName(kept.attribute)
     throw refuse.conflict(
       `${label} of jar ${jar.code} is on record as "${kept.typed}". Correct that reading, with the reason, instead of sending it anew.`,
       { kind: 'reading', readingId: kept.id },
