@@ -11,12 +11,12 @@ export const permission = 'profile.own'
 export default async function NotebookLayout({ children }: { children: ReactNode }) {
   const { actor, db, now } = await page(permission)
   const lab = await getLab(db)
-  const { name, initials, email, roles } = actor
+  const { personId, name, initials, email, roles } = actor
   const demoPersonId = actor.isDemo ? actor.personId : null
   const isDemo = env().demo && lab.demoFilledAt !== null
   return (
     <Shell
-      who={{ name, initials, email, roles, demoPersonId }}
+      who={{ personId, name, initials, email, roles, demoPersonId }}
       places={placesOf({ actor, hasMailFake: env().smtpUrl === null && lab.demoFilledAt !== null })}
       labName={lab.name}
       day={dayWithName(now, lab.timeZone)}

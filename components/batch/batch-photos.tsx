@@ -1,12 +1,11 @@
 'use client'
 
 import { useRef, useState } from 'react'
+import { PhotosOnTheirWay } from '@/components/device/photos-on-their-way'
+import { usePhotos } from '@/components/device/use-photos'
 import { Button } from '@/components/ui/button'
-import { ErrorNote } from '@/components/ui/error-note'
 import { Field } from '@/components/ui/field'
 import { batchPhotoKeys } from '@/lib/batch/schema'
-import { newId } from '@/lib/db/id'
-import { send } from '@/lib/http/fetcher'
 import { dayAndHour } from './balance-choice'
 import type { BatchWork } from './work'
 
@@ -14,29 +13,19 @@ import type { BatchWork } from './work'
 export function BatchPhotos({ work, isOpen }: { work: BatchWork; isOpen: boolean }) {
   const { batch } = work
   const [note, setNote] = useState('')
-  const [error, setError] = useState<unknown>(null)
-  const [isBusy, setBusy] = useState(false)
   const input = useRef<HTMLInputElement>(null)
+  const { add, onTheirWay } = usePhotos({
+    url: batchPhotoKeys.add(batch.code),
+    fields: { note },
+    about: { label: `Photo of ${batch.code}`, what: note, batchCode: batch.code },
+    onSent: work.onSaved,
+  })
 
-  async function add(file: File | undefined) {
+  function take(file: File | undefined) {
     if (!file) return
-    setBusy(true)
-    setError(null)
-    const now = new Date().toISOString()
-    const form = new FormData()
-    for (const [name, value] of Object.entries({ id: newId(), note, deviceNow: now, claimedAt: now }))
-      form.append(name, value)
-    form.append('file', file)
-    try {
-      await send(batchPhotoKeys.add(batch.code), 'POST', form)
-      setNote('')
-      await work.onSaved()
-    } catch (refused) {
-      setError(refused)
-    } finally {
-      setBusy(false)
-      if (input.current) input.current.value = ''
-    }
+    void add(file)
+    setNote('')
+    if (input.current) input.current.value = ''
   }
 
   if (!isOpen && !batch.photos.length) return null
@@ -79,16 +68,12 @@ export function BatchPhotos({ work, isOpen }: { work: BatchWork; isOpen: boolean
             className="sr-only"
             aria-label={`A photo of ${batch.code}`}
             tabIndex={-1}
-            onChange={(event) => void add(event.target.files?.[0])}
+            onChange={(event) => take(event.target.files?.[0])}
           />
-          <Button busy={isBusy} onClick={() => input.current?.click()}>
-            Add a photo
-          </Button>
+          <Button onClick={() => input.current?.click()}>Add a photo</Button>
         </div>
       ) : null}
-      <div className="mt-2">
-        <ErrorNote error={error} />
-      </div>
+      <PhotosOnTheirWay photos={onTheirWay} />
     </div>
   )
 }

@@ -1,13 +1,13 @@
 'use client'
 
 import { useState } from 'react'
-import { entryOutbox } from './kept-entries'
+import type { OutboxItem } from '@/components/device/outbox-item'
 import type { BatchOutbox } from './use-batch-outbox'
 
 /** Under a bracket: what of this batch is still only on this tablet. Nothing is shown while all is on the server. */
 export function BatchTray({ outbox }: { outbox: BatchOutbox }) {
   const { kept, waiting, isOnline, flush } = outbox
-  const refused = kept.filter((item) => item.refused !== null)
+  const refused = kept.filter((item) => item.refusal !== null)
   if (isOnline && kept.length === 0) return null
   return (
     <div data-screen-only className="mt-3 flex flex-col gap-3">
@@ -27,13 +27,13 @@ export function BatchTray({ outbox }: { outbox: BatchOutbox }) {
         </button>
       ) : null}
       {refused.map((item) => (
-        <Refused key={item.id} id={item.id} name={item.name} sentence={item.refused ?? ''} />
+        <Refused key={item.id} item={item} onDrop={() => void outbox.drop(item)} />
       ))}
     </div>
   )
 }
 
-function Refused({ id, name, sentence }: { id: string; name: string; sentence: string }) {
+function Refused({ item, onDrop }: { item: OutboxItem; onDrop: () => void }) {
   const [isAsked, setIsAsked] = useState(false)
   return (
     <div
@@ -41,11 +41,12 @@ function Refused({ id, name, sentence }: { id: string; name: string; sentence: s
       className="flex flex-wrap items-center justify-between gap-4 border-b-[3px] border-alarm pb-2"
     >
       <p className="text-17">
-        <b>{name} was not taken.</b> {sentence} Enter it again, then put this one away.
+        <b>{item.about.label} was not taken.</b> {item.refusal?.sentence} Enter it again, then put this one
+        away.
       </p>
       <button
         type="button"
-        onClick={() => (isAsked ? entryOutbox.drop((item) => item.id === id) : setIsAsked(true))}
+        onClick={() => (isAsked ? onDrop() : setIsAsked(true))}
         className="min-h-16 rounded border-2 border-alarm px-4 text-17 text-alarm"
       >
         {isAsked ? 'Yes, put it away' : 'Put it away'}

@@ -36,7 +36,7 @@ export function BatchView({ code, part, personId, mayWrite, mayStart }: Props) {
   const { data, mutate } = useSWR<BatchPage>(batchKey(code), fetcher)
   const isBench = useBench()
   const onSaved = useCallback(() => mutate(), [mutate])
-  const outbox = useBatchOutbox(personId, code, onSaved)
+  const outbox = useBatchOutbox(code, onSaved)
   const [paper, setPaper] = useState({ isOn: false, at: '' })
   if (!data) return null
   const batch = withKept(data, outbox.kept)

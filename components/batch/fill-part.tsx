@@ -14,7 +14,7 @@ import { readDecimal, readTyped } from '@/lib/number/rules'
 import { netGrams } from '@/lib/science/making'
 import { dayAndHour } from './balance-choice'
 import { useEntry } from './use-entry'
-import { useKeptDraft } from './use-kept-draft'
+import { useKept } from '@/components/device/use-kept'
 import type { BatchWork } from './work'
 
 type Jar = BatchPage['jars'][number]
@@ -100,8 +100,8 @@ function FillForm({
   const { keep, isSending, fields, refusal } = useEntry(work)
   const [id] = useState(newId)
   const next = Math.max(0, ...batch.jars.map((jar) => jar.number)) + 1
-  const [typed, set, forget] = useKeptDraft(
-    `${work.personId}.${batch.id}.jar.${corrected?.id ?? next}`,
+  const [typed, set, forget] = useKept(
+    `batch.${batch.id}.jar.${corrected?.id ?? next}`,
     corrected
       ? {
           ...{

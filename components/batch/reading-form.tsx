@@ -16,7 +16,7 @@ import { dropCount } from '@/lib/batch/rules/droplets'
 import { ReadingDetailFields, type DetailTexts } from './reading-detail-fields'
 import { figureOf } from './reading-words'
 import { useEntry } from './use-entry'
-import { useKeptDraft } from './use-kept-draft'
+import { useKept } from '@/components/device/use-kept'
 import type { BatchWork } from './work'
 
 type Reading = BatchPage['readings'][number]
@@ -27,9 +27,9 @@ export function ReadingForm({ work, moment, corrected, onKept }: Props) {
   const { batch } = work
   const { keep, isSending, fields, refusal } = useEntry(work)
   const [id] = useState(newId)
-  const [draft, set, forget] = useKeptDraft(
+  const [draft, set, forget] = useKept(
     // Counted on, so that what was just kept is not found again as a draft.
-    `${work.personId}.${batch.id}.${moment}.${corrected?.id ?? batch.readings.length}`,
+    `batch.${batch.id}.${moment}.${corrected?.id ?? batch.readings.length}`,
     corrected ? draftOf(corrected) : emptyDraft(phPathFor(batch.emulsionType)),
   )
   const attribute = batchAttributes.find((one) => one === draft.attribute)

@@ -11,7 +11,7 @@ import { newId } from '@/lib/db/id'
 import { readDecimal, readTyped } from '@/lib/number/rules'
 import { dayAndHour } from './balance-choice'
 import { useEntry } from './use-entry'
-import { useKeptDraft } from './use-kept-draft'
+import { useKept } from '@/components/device/use-kept'
 import type { BatchWork } from './work'
 
 type Props = {
@@ -29,7 +29,7 @@ export function StepForm({ work, step, number, onDone }: Props) {
   const { keep, isSending, fields, refusal } = useEntry(work)
   const [id] = useState(newId)
   const noteField = useRef<HTMLInputElement>(null)
-  const [typed, set, forget] = useKeptDraft(`${work.personId}.${step.id}`, {
+  const [typed, set, forget] = useKept(`batch.${step.id}`, {
     ...{ speed: textOf(step.actualSpeedRpm), minutes: textOf(step.actualMinutes) },
     ...{ temperature: textOf(step.actualTemperatureC), note: step.note, reason: '' },
   })

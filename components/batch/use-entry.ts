@@ -1,6 +1,6 @@
 import { useState } from 'react'
 import { ClientError } from '@/lib/http/fetcher'
-import type { NewEntry } from './kept-entries'
+import type { NewEntry } from './use-batch-outbox'
 import type { BatchWork } from './work'
 
 /** One entry at the batch: kept or sent, its refusal beside what was typed. */
@@ -8,7 +8,7 @@ export function useEntry(work: BatchWork) {
   const [refusal, setRefusal] = useState<ClientError | null>(null)
   const [isSending, setIsSending] = useState(false)
 
-  async function keep(item: Omit<NewEntry, 'personId' | 'batchCode'>): Promise<boolean> {
+  async function keep(item: NewEntry): Promise<boolean> {
     setRefusal(null)
     setIsSending(true)
     try {

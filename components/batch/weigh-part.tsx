@@ -3,7 +3,7 @@
 import { useState } from 'react'
 import { BalanceChoice, type Balance } from './balance-choice'
 import { Beaker } from './beaker'
-import { useKeptDraft } from './use-kept-draft'
+import { useKept } from '@/components/device/use-kept'
 import { emptyWeighDraft, judged } from './weigh-draft'
 import { WeighList } from './weigh-list'
 import { WeighPanel } from './weigh-panel'
@@ -12,16 +12,16 @@ import type { BatchWork } from './work'
 
 /** The weighing sheet: the row of jars, the vessel, the list, and the line in hand. */
 export function WeighPart({ work }: { work: BatchWork }) {
-  const { batch, isBench, personId } = work
+  const { batch, isBench } = work
   const lines = batch.weighings
   const isOpen = work.mayWrite && batch.state === 'making'
   const [picked, setPicked] = useState<string | null>(null)
-  const [balance, setBalance] = useKeptDraft<Balance>(`balance.${personId}`, { id: '', name: '' })
+  const [balance, setBalance] = useKept<Balance>('batch.balance', { id: '', name: '' })
   const current = isOpen
     ? (lines.find((line) => line.id === picked) ?? lines.find((line) => line.actualG === null))
     : undefined
   const next = lines.find((line) => line.actualG === null && line.id !== current?.id)
-  const [draft, setDraft, forget] = useKeptDraft(`${personId}.${current?.id ?? 'none'}`, emptyWeighDraft)
+  const [draft, setDraft, forget] = useKept(`batch.${current?.id ?? 'none'}`, emptyWeighDraft)
   const now = current ? judged(current, draft, batch.tolerancePercent) : null
   const isWater = (line: { isInternal: boolean }) =>
     line.isInternal === (batch.emulsionType !== 'oil-in-water')

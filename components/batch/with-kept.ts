@@ -1,19 +1,19 @@
 import type { BatchPage } from '@/lib/batch/queries/get-batch'
 import { currentPortions, gramsIn, readWeight } from '@/lib/batch/rules/weighing'
 import { doStepInput, fillJarInput, batchReadingInput, weighInput } from '@/lib/batch/schema'
-import type { KeptEntry } from './kept-entries'
+import type { OutboxItem } from '@/components/device/outbox-item'
 
 /** The batch as it will be once what this tablet keeps has gone out: shown at once, versions counted on. */
-export function withKept(batch: BatchPage, kept: readonly KeptEntry[]): BatchPage {
-  return kept.filter((item) => item.refused === null).reduce(withOne, batch)
+export function withKept(batch: BatchPage, kept: readonly OutboxItem[]): BatchPage {
+  return kept.filter((item) => item.refusal === null && item.about.kind === 'batch').reduce(withOne, batch)
 }
 
-function withOne(batch: BatchPage, item: KeptEntry): BatchPage {
+function withOne(batch: BatchPage, item: OutboxItem): BatchPage {
   const device = { recordedAt: item.keptAt, by: 'this tablet', isFromPaper: false }
   const at = typeof item.body['claimedAt'] === 'string' ? item.body['claimedAt'] : item.keptAt
-  if (item.kind === 'weighings') return withPortion(batch, item, { ...device, weighedAt: at })
-  if (item.kind === 'steps') return withStep(batch, item, { ...device, happenedAt: at })
-  if (item.kind === 'fills') {
+  if (item.about.list === 'weighings') return withPortion(batch, item, { ...device, weighedAt: at })
+  if (item.about.list === 'steps') return withStep(batch, item, { ...device, happenedAt: at })
+  if (item.about.list === 'fills') {
     const jar = fillJarInput.safeParse(item.body).data
     if (!jar || batch.jars.some((one) => one.id === jar.id)) return batch
     return { ...batch, jars: [...batch.jars, { ...jar, ...device, filledAt: at }] }
@@ -26,7 +26,7 @@ function withOne(batch: BatchPage, item: KeptEntry): BatchPage {
 
 type Device = { recordedAt: string; by: string; isFromPaper: boolean }
 
-function withPortion(batch: BatchPage, item: KeptEntry, device: Device & { weighedAt: string }): BatchPage {
+function withPortion(batch: BatchPage, item: OutboxItem, device: Device & { weighedAt: string }): BatchPage {
   const input = weighInput.safeParse(item.body).data
   if (!input) return batch
   const weight = readWeight(input.actualTyped, input.tareTyped, input.supersedes !== null)
@@ -45,7 +45,7 @@ function withPortion(batch: BatchPage, item: KeptEntry, device: Device & { weigh
   return { ...batch, weighings }
 }
 
-function withStep(batch: BatchPage, item: KeptEntry, device: Device & { happenedAt: string }): BatchPage {
+function withStep(batch: BatchPage, item: OutboxItem, device: Device & { happenedAt: string }): BatchPage {
   const input = doStepInput.safeParse(item.body).data
   if (!input) return batch
   const steps = batch.steps.map((step) => {

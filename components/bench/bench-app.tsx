@@ -5,7 +5,7 @@ import { useCallback, useEffect } from 'react'
 import useSWR, { preload } from 'swr'
 import { BenchDay } from '@/components/bench/bench-day'
 import { JarScreen } from '@/components/bench/jar-screen'
-import { useJarOutbox } from '@/components/bench/kept-jars'
+import { useOutbox } from '@/components/device/use-outbox'
 import { benchKeys } from '@/lib/bench/schema'
 import type { Bench } from '@/lib/bench/queries/today'
 import { fetcher } from '@/lib/http/fetcher'
@@ -21,7 +21,7 @@ export function BenchApp({ person }: { person: BenchPerson }) {
   const code = path.startsWith('/bench/') ? decodeURIComponent(path.slice('/bench/'.length)) : null
   const { data: bench, mutate } = useSWR<Bench>(benchKeys.today, fetcher, { refreshInterval: 30_000 })
   const refresh = useCallback(() => void mutate(), [mutate])
-  const outbox = useJarOutbox(person.personId, refresh)
+  const outbox = useOutbox(refresh)
 
   useEffect(() => {
     if (!bench) return

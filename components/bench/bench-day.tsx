@@ -3,14 +3,16 @@
 import { useState } from 'react'
 import { FindJar } from '@/components/bench/find-jar'
 import { JarRow } from '@/components/bench/jar-row'
-import { TinyJar, Tray, type Outbox } from '@/components/bench/tray'
+import { codesKept } from '@/components/bench/kept-jars'
+import { TinyJar, Tray } from '@/components/bench/tray'
+import type { OutboxOnScreen } from '@/components/device/use-outbox'
 import { heatLine } from '@/components/marks/heat'
 import { StationLabel } from '@/components/ui/station-label'
 import type { Bench, BenchStation } from '@/lib/bench/queries/today'
 import { dayText } from '@/lib/report/rules'
 import { periodText } from '@/lib/station/rules/downtime'
 
-type Props = { bench: Bench; outbox: Outbox; onOpen: (code: string) => void }
+type Props = { bench: Bench; outbox: OutboxOnScreen; onOpen: (code: string) => void }
 
 /** Today, in the order one walks the stations. The first with something to do is open; any can be. */
 export function BenchDay({ bench, outbox, onOpen }: Props) {
@@ -20,7 +22,7 @@ export function BenchDay({ bench, outbox, onOpen }: Props) {
   const openId = picked ?? first
   const { total, done, missed } = bench.counts
   const left = total - done - missed
-  const kept = new Set(outbox.kept.map((k) => k.code))
+  const kept = codesKept(outbox.items)
   return (
     <div className="mx-auto flex min-h-[calc(100dvh-64px)] max-w-[820px] flex-col">
       <div className="flex flex-wrap items-center justify-between gap-3 px-4 pt-3 sm:px-5">

@@ -118,23 +118,3 @@ export function withIds(draft: Draft, slots: Slot[]): Draft {
   }
   return { ...draft, ids }
 }
-
-const storeKey = (personId: string, pullJarId: string) => `stillstand.draft.${personId}.${pullJarId}`
-
-export function readDraft(personId: string, pullJarId: string): Draft | null {
-  try {
-    const text = localStorage.getItem(storeKey(personId, pullJarId))
-    return text ? (JSON.parse(text) as Draft) : null
-  } catch {
-    return null
-  }
-}
-
-export function keepDraft(personId: string, pullJarId: string, draft: Draft | null): void {
-  try {
-    if (draft) localStorage.setItem(storeKey(personId, pullJarId), JSON.stringify(draft))
-    else localStorage.removeItem(storeKey(personId, pullJarId))
-  } catch {
-    // A full or forbidden store loses the draft at a reload, not what is on the screen.
-  }
-}

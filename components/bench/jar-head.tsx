@@ -1,8 +1,17 @@
-import { Tray, type Outbox } from '@/components/bench/tray'
+import { Tray } from '@/components/bench/tray'
+import type { OutboxOnScreen } from '@/components/device/use-outbox'
 import { LightSwitch } from '@/components/bench/light-switch'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 
-export function JarHead({ jar, outbox, onWalk }: { jar: BenchJarPage; outbox: Outbox; onWalk: () => void }) {
+export function JarHead({
+  jar,
+  outbox,
+  onWalk,
+}: {
+  jar: BenchJarPage
+  outbox: OutboxOnScreen
+  onWalk: () => void
+}) {
   return (
     <header className="flex items-center gap-3 px-4 py-3 sm:gap-5 sm:px-5 sm:py-4">
       <button

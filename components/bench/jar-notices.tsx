@@ -1,4 +1,4 @@
-import type { KeptJar } from '@/components/bench/kept-jars'
+import type { OutboxItem } from '@/components/device/outbox-item'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 
 /** What one should know before typing: an entry that waits on this tablet, or someone else at the same jar. */
@@ -8,15 +8,15 @@ export function JarNotices({
   isOthers,
 }: {
   jar: BenchJarPage
-  kept: KeptJar | undefined
+  kept: OutboxItem | undefined
   isOthers: boolean
 }) {
   return (
     <>
       {kept ? (
         <p className="mx-4 mt-3 border-l-4 border-ink pl-3 sm:mx-7" role="status">
-          {kept.refused
-            ? `The server did not take what was kept here: ${kept.refused}`
+          {kept.refusal
+            ? `The server did not take what was kept here: ${kept.refusal.sentence}`
             : 'What you typed is kept on this tablet and goes out when the network is back.'}
         </p>
       ) : null}

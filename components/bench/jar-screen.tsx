@@ -3,7 +3,7 @@
 import useSWR from 'swr'
 import type { BenchPerson } from '@/components/bench/bench-app'
 import { OpenJar } from '@/components/bench/open-jar'
-import type { Outbox } from '@/components/bench/tray'
+import type { OutboxOnScreen } from '@/components/device/use-outbox'
 import { Button } from '@/components/ui/button'
 import { ErrorNote } from '@/components/ui/error-note'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
@@ -15,7 +15,7 @@ export type JarScreenProps = {
   code: string
   bench: Bench
   person: BenchPerson
-  outbox: Outbox
+  outbox: OutboxOnScreen
   onOpen: (code: string) => void
   onWalk: () => void
   onChange: () => void

@@ -1,11 +1,10 @@
-import { makeOutbox, type Waiting } from '@/components/ui/outbox'
-import { useOutbox } from '@/components/ui/use-outbox'
-import { send } from '@/lib/http/fetcher'
+import type { OutboxItem } from '@/components/device/outbox-item'
 
-/** A jar's entry; where it was refused, its jar must be opened again. */
-export type KeptJar = Waiting & { url: string; pullJarId: string; jarName: string; code: string }
+/** The readings of a jar that are still only on this device. */
+export function isKeptJar(item: OutboxItem): boolean {
+  return item.about.kind === 'jar'
+}
 
-/** One entry a jar: the readings' own ids make a repeat harmless. */
-export const jarOutbox = makeOutbox<KeptJar>('stillstand.outbox', ({ url }, body) => send(url, 'POST', body))
-
-export const useJarOutbox = (personId: string, onSent: () => void) => useOutbox(jarOutbox, personId, onSent)
+export function codesKept(items: readonly OutboxItem[]): Set<string> {
+  return new Set(items.filter(isKeptJar).flatMap(({ about }) => (about.code ? [about.code] : [])))
+}

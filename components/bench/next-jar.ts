@@ -1,9 +1,10 @@
-import type { Outbox } from '@/components/bench/tray'
+import { codesKept } from '@/components/bench/kept-jars'
+import type { OutboxOnScreen } from '@/components/device/use-outbox'
 import type { Bench } from '@/lib/bench/queries/today'
 
 /** The next jar to read at the same station, then at those after it. */
-export function nextJar(bench: Bench, code: string, outbox: Outbox) {
-  const kept = new Set(outbox.kept.map((k) => k.code))
+export function nextJar(bench: Bench, code: string, outbox: OutboxOnScreen) {
+  const kept = codesKept(outbox.items)
   const all = bench.stations.flatMap((s) => s.jars)
   const from = all.findIndex((j) => j.code === code)
   const isOpen = (j: (typeof all)[number]) =>

@@ -30,7 +30,7 @@ export function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }
   const mayType = person.mayLog && !isDone && !isResting && !jar.isEarly && jar.isStudyRunning
   useAwake(mayType)
   const next = nextJar(bench, jar.code, outbox)
-  const entry = useJarEntry({ jar, person, outbox, mayType, onChange, onDone: goOn })
+  const entry = useJarEntry({ jar, outbox, mayType, onChange, onDone: goOn })
 
   function goOn(sentence: string) {
     toast(sentence)

@@ -1,15 +1,15 @@
 'use client'
 
-import { useRef, useState } from 'react'
+import { useRef } from 'react'
 import useSWR from 'swr'
 import type { Slot } from '@/components/bench/draft'
 import { slotLabel } from '@/components/bench/verdict'
+import { PhotosOnTheirWay } from '@/components/device/photos-on-their-way'
+import { usePhotos } from '@/components/device/use-photos'
 import { Button } from '@/components/ui/button'
-import { ErrorNote } from '@/components/ui/error-note'
 import { TextArea } from '@/components/ui/text-area'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
-import { newId } from '@/lib/db/id'
-import { fetcher, send } from '@/lib/http/fetcher'
+import { fetcher } from '@/lib/http/fetcher'
 import { photoKeys } from '@/lib/photo/schema'
 import { dayText } from '@/lib/report/rules'
 
@@ -71,33 +71,20 @@ type Photo = { id: string; takenAt: string; takenBy?: string }
 /** Photos of this jar: the camera or a file; the original is kept byte for byte. */
 export function PhotoPanel({ jar }: { jar: BenchJarPage }) {
   const { data: photos, mutate } = useSWR<Photo[]>(photoKeys.ofJar(jar.study.code, jar.code), fetcher)
-  const [error, setError] = useState<unknown>(null)
-  const [isBusy, setBusy] = useState(false)
   const input = useRef<HTMLInputElement>(null)
+  const { add, onTheirWay } = usePhotos({
+    url: photoKeys.add,
+    fields: { pullJarId: jar.pullJarId },
+    about: {
+      ...{ label: `Photo of jar ${jar.name}`, code: jar.code, pullJarId: jar.pullJarId },
+      href: `/bench/${jar.code}`,
+    },
+    onSent: () => mutate(),
+  })
 
-  async function add(file: File | undefined) {
-    if (!file) return
-    setBusy(true)
-    setError(null)
-    const now = new Date().toISOString()
-    const form = new FormData()
-    for (const [name, value] of Object.entries({
-      id: newId(),
-      pullJarId: jar.pullJarId,
-      deviceNow: now,
-      claimedAt: now,
-    }))
-      form.append(name, value)
-    form.append('file', file)
-    try {
-      await send(photoKeys.add, 'POST', form)
-      await mutate()
-    } catch (refused) {
-      setError(refused)
-    } finally {
-      setBusy(false)
-      if (input.current) input.current.value = ''
-    }
+  function take(file: File | undefined) {
+    if (file) void add(file)
+    if (input.current) input.current.value = ''
   }
 
   return (
@@ -106,7 +93,6 @@ export function PhotoPanel({ jar }: { jar: BenchJarPage }) {
       <p className="text-17 text-soft">
         One light, one scale, label to the front. The original is kept as it is.
       </p>
-      <ErrorNote error={error} />
       <div className="mt-3 flex flex-wrap items-end gap-3">
         {(photos ?? []).slice(0, 8).map((photo) => (
           <a key={photo.id} href={photoKeys.original(photo.id)} className="block">
@@ -128,12 +114,13 @@ export function PhotoPanel({ jar }: { jar: BenchJarPage }) {
           className="sr-only"
           aria-label="Take a photo"
           tabIndex={-1}
-          onChange={(event) => void add(event.target.files?.[0])}
+          onChange={(event) => take(event.target.files?.[0])}
         />
-        <Button density="bench" busy={isBusy} onClick={() => input.current?.click()}>
+        <Button density="bench" onClick={() => input.current?.click()}>
           Take a photo
         </Button>
       </div>
+      <PhotosOnTheirWay photos={onTheirWay} />
     </div>
   )
 }

@@ -1,12 +1,10 @@
-import type { useJarOutbox } from '@/components/bench/kept-jars'
+import type { OutboxOnScreen } from '@/components/device/use-outbox'
 import { JarGlyph } from '@/components/marks/jar-glyph'
 
-export type Outbox = ReturnType<typeof useJarOutbox>
-
 /** The bracket under jars that are still only on this tablet; nothing is shown while all is on the server. */
-export function Tray({ outbox }: { outbox: Outbox }) {
-  const { kept, isOnline, flush } = outbox
-  const refused = kept.filter((k) => k.refused !== null).length
+export function Tray({ outbox }: { outbox: OutboxOnScreen }) {
+  const { items: kept, isOnline, flush } = outbox
+  const refused = kept.filter((item) => item.refusal !== null).length
   if (isOnline && kept.length === 0) return null
   return (
     <button

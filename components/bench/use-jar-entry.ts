@@ -2,23 +2,20 @@
 
 import { useEffect, useMemo, useRef, useState } from 'react'
 import { askLocally, type AlreadyRead, type Answer } from '@/components/bench/answers'
-import type { BenchPerson } from '@/components/bench/bench-app'
 import { dayInstrument, rememberInstrument } from '@/components/bench/day-instrument'
-import { entriesOf, slotsOf, withIds, type Slot } from '@/components/bench/draft'
-import { jarOutbox } from '@/components/bench/kept-jars'
-import type { Outbox } from '@/components/bench/tray'
-import { useDraft } from '@/components/bench/use-draft'
+import { emptyDraft, entriesOf, slotsOf, withIds, type Slot } from '@/components/bench/draft'
+import { isKeptJar } from '@/components/bench/kept-jars'
 import { verdictOf } from '@/components/bench/verdict'
-import { isPassing } from '@/components/ui/outbox'
+import type { OutboxItem } from '@/components/device/outbox-item'
+import { useKept } from '@/components/device/use-kept'
+import type { OutboxOnScreen } from '@/components/device/use-outbox'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
-import { newId } from '@/lib/db/id'
 import { ClientError, send } from '@/lib/http/fetcher'
 import { pullKeys } from '@/lib/pull/schema'
 
 type Options = {
   jar: BenchJarPage
-  person: BenchPerson
-  outbox: Outbox
+  outbox: OutboxOnScreen
   mayType: boolean
   onChange: () => void
   /** The entry is on its way: on the server, or on this tablet. */
@@ -28,12 +25,13 @@ type Options = {
 export type JarEntry = ReturnType<typeof useJarEntry>
 
 /** What is typed of one jar in one pull: where the hand is, what it means, and keeping it. */
-export function useJarEntry({ jar, person, outbox, mayType, onChange, onDone }: Options) {
+export function useJarEntry({ jar, outbox, mayType, onChange, onDone }: Options) {
   const slots = useMemo(
     () => slotsOf(jar.fields, jar.tareG !== null && jar.grossG !== null),
     [jar.fields, jar.tareG, jar.grossG],
   )
-  const [draft, setDraft, forget] = useDraft(person.personId, jar.pullJarId)
+  const draftKey = `jar.${jar.pullJarId}`
+  const [draft, setDraft] = useKept(draftKey, emptyDraft(''))
   const [at, setAt] = useState<string>(slots[0]?.key ?? 'note')
   const [error, setError] = useState<unknown>(null)
   const [asked, setAsked] = useState<ClientError | null>(null)
@@ -50,7 +48,7 @@ export function useJarEntry({ jar, person, outbox, mayType, onChange, onDone }: 
     return { key: slot.key, slot, text, verdict: verdictOf(slot.field, entry, jar) }
   })
   const open = slots.filter((s) => (draft.texts[s.key] ?? '').trim() === '')
-  const isThisJar = (kept: { pullJarId: string }) => kept.pullJarId === jar.pullJarId
+  const isThisJar = (item: OutboxItem) => isKeptJar(item) && item.about.pullJarId === jar.pullJarId
 
   function type(key: string, text: string) {
     const id = slots.find((s) => s.key === key)
@@ -91,25 +89,25 @@ export function useJarEntry({ jar, person, outbox, mayType, onChange, onDone }: 
     }
     setError(null)
     try {
-      await send(pullKeys.readings(jar.pullJarId), 'POST', body)
-      jarOutbox.drop(isThisJar)
-      done(`Kept: ${jar.name}`)
+      const outcome = await outbox.send(
+        {
+          ...{ url: pullKeys.readings(jar.pullJarId), body },
+          about: {
+            ...{ kind: 'jar', label: `Jar ${jar.name}`, code: jar.code, pullJarId: jar.pullJarId },
+            what: readings.map((entry) => `${labelOf(entry.attribute)} ${entry.typed}`).join(', '),
+            href: `/bench/${jar.code}`,
+          },
+          draft: { key: draftKey, value: sending },
+        },
+        isThisJar,
+      )
+      if (outcome.how === 'sent') done(`Kept: ${jar.name}`)
+      // Asked here, because nobody will be at the jar when the entry goes out.
+      else if (missing.length > 0 && !extra.leaveOut) setAsked(askLocally(missing))
+      else done(`Kept on this tablet: ${jar.name}. It goes out when the network is back.`)
     } catch (refused) {
       if (!(refused instanceof ClientError)) setError(refused)
-      else if (isPassing(refused) && missing.length > 0 && !extra.leaveOut) {
-        // Asked here, because nobody will be at the jar when the entry goes out.
-        setAsked(askLocally(missing))
-      } else if (isPassing(refused)) {
-        jarOutbox.keep(
-          {
-            ...{ id: newId(), personId: person.personId, url: pullKeys.readings(jar.pullJarId), body },
-            ...{ pullJarId: jar.pullJarId, jarName: jar.name, code: jar.code },
-          },
-          isThisJar,
-        )
-        outbox.setOnline(false)
-        done(`Kept on this tablet: ${jar.name}. It goes out when the network is back.`)
-      } else if (refused.code === 'confirm') setAsked(refused)
+      else if (refused.code === 'confirm') setAsked(refused)
       else if (refused.code === 'already read') setTwice(refused.detail as AlreadyRead)
       else setError(refused)
     } finally {
@@ -118,11 +116,13 @@ export function useJarEntry({ jar, person, outbox, mayType, onChange, onDone }: 
   }
 
   function done(sentence: string) {
-    if (!outbox.kept.some(isThisJar)) forget()
     setAsked(null)
     setTwice(null)
     onDone(sentence)
   }
+
+  const labelOf = (attribute: string) =>
+    jar.fields.find((field) => field.attribute === attribute)?.label ?? attribute
 
   function step() {
     const from = slots.findIndex((s) => s.key === at)
@@ -133,7 +133,7 @@ export function useJarEntry({ jar, person, outbox, mayType, onChange, onDone }: 
 
   return {
     ...{ slots, tabs, open, entries, draft, at, error, asked, twice, isBusy },
-    kept: outbox.kept.find(isThisJar),
+    kept: outbox.items.find(isThisJar),
     instrumentOf: (slot: Slot) =>
       draft.instruments[`${slot.field.attribute}.${slot.replicate}`] ?? dayInstrument(jar, slot),
     goTo: setAt,

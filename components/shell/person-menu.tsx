@@ -12,6 +12,7 @@ import { themes, type Theme } from './theme'
 import { useTheme } from './use-theme'
 
 export type Who = {
+  personId: string
   name: string
   initials: string
   email: string

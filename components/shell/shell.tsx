@@ -3,6 +3,8 @@
 import Link from 'next/link'
 import { usePathname } from 'next/navigation'
 import type { ReactNode } from 'react'
+import { DeviceOf } from '@/components/device/device-context'
+import { DeviceKeeper } from '@/components/device/device-keeper'
 import { Logo } from '@/components/marks/logo'
 import { SignedOutDialog } from '@/components/session/signed-out-dialog'
 import { Finder } from './finder'
@@ -20,10 +22,11 @@ export function Shell(props: Props) {
   const path = usePathname()
   const isBench = path === '/bench' || path.startsWith('/bench/')
   return (
-    <>
+    <DeviceOf personId={props.who.personId}>
+      <DeviceKeeper />
       {isBench ? <BenchShell {...props} isWhole={path !== '/bench'} /> : <DeskShell {...props} path={path} />}
       <SignedOutDialog who={props.who} density={isBench ? 'bench' : 'desk'} />
-    </>
+    </DeviceOf>
   )
 }
 

@@ -21,18 +21,21 @@ export class ClientError extends Error {
 
 /** For SWR. */
 export async function fetcher<T>(url: string): Promise<T> {
-  return read<T>(await reach(url, { headers: { accept: 'application/json' } }))
+  return readAnswer<T>(await reach(url, { headers: { accept: 'application/json' } }))
 }
 
-/** Give the same key again when the same act is sent again: it then happens once. */
+/**
+ * Give the same key again when the same act is sent again: it then happens once. With `personId` it is refused where
+ * somebody else has signed in here meanwhile.
+ */
 export async function send<T>(
   url: string,
   method: 'POST' | 'PUT' | 'PATCH' | 'DELETE',
   body: unknown,
-  options: { key?: string; signal?: AbortSignal } = {},
+  options: { key?: string; signal?: AbortSignal; personId?: string } = {},
 ): Promise<T> {
   const isForm = body instanceof FormData
-  return read<T>(
+  return readAnswer<T>(
     await reach(url, {
       method,
       body: isForm ? body : JSON.stringify(body ?? {}),
@@ -41,6 +44,7 @@ export async function send<T>(
         accept: 'application/json',
         'idempotency-key': options.key ?? newId(),
         ...(isForm ? {} : { 'content-type': 'application/json' }),
+        ...(options.personId ? { 'stillstand-person': options.personId } : {}),
       },
     }),
   )
@@ -51,15 +55,24 @@ async function reach(url: string, init: RequestInit): Promise<Response> {
     return await fetch(url, { ...init, credentials: 'same-origin' })
   } catch (cause) {
     if (cause instanceof DOMException && cause.name === 'AbortError') throw cause
-    throw new ClientError({
-      status: 0,
-      code: 'unreachable',
-      sentence: 'The server cannot be reached. Check the connection, then try again.',
-    })
+    throw unreachable()
   }
 }
 
-async function read<T>(response: Response): Promise<T> {
+export function unreachable(): ClientError {
+  return new ClientError({
+    status: 0,
+    code: 'unreachable',
+    sentence: 'The server cannot be reached. Check the connection, then try again.',
+  })
+}
+
+/** No network, a restart, too many at once, or signed out: the same entry can go out later. */
+export function isPassing(error: ClientError): boolean {
+  return error.status === 0 || error.status === 401 || error.status === 429 || error.status >= 500
+}
+
+export async function readAnswer<T>(response: Response): Promise<T> {
   const body: unknown = await response.json().catch(() => null)
   if (response.ok) return body as T
   const error = (body as ErrorBody | null)?.error

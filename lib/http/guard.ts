@@ -14,6 +14,12 @@ export async function authenticate(
   if (permission === 'public') return systemActor(requestId)
   const actor = await findActor(request.headers.get('cookie'), requestId)
   if (!actor) throw refuse.signIn()
+  // A page left open by one person must not write under another who has signed in on the same device since.
+  const meant = request.headers.get('stillstand-person')
+  if (meant && meant !== actor.personId)
+    throw refuse.signIn(
+      `${actor.name} is signed in on this device now. What you typed is kept; sign in again to send it.`,
+    )
   return actor
 }
 

@@ -1,0 +1,254 @@
+import { isSignedOut, keep } from '@/components/session/keep'
+import { ClientError, isPassing } from '@/lib/http/fetcher'
+import type { Drafts } from './drafts'
+import {
+  laneOf,
+  mayGoOut,
+  newItem,
+  nextToSend,
+  type Lane,
+  type NewItem,
+  type OutboxItem,
+} from './outbox-item'
+import { oneTabAtATime } from './one-tab'
+import { postItem } from './post-item'
+import type { Store } from './store'
+import type { Tabs } from './tabs'
+import { makeWaiting, type Outcome } from './waiting'
+
+export type OutboxState = {
+  items: readonly OutboxItem[]
+  /** Whether the server was reached when it was last asked. */
+  isOnline: boolean
+  isSignedOut: boolean
+  /** Percent of what is on its way, by its id. */
+  sending: Readonly<Record<string, number>>
+  /** Ids of entries that somebody stands and waits for; they are told there, not among what waits. */
+  awaited: readonly string[]
+}
+export const emptyOutbox: OutboxState = {
+  ...{ items: [], isOnline: true, isSignedOut: false, sending: {}, awaited: [] },
+}
+
+export type Outbox = ReturnType<typeof makeOutbox>
+
+const lanes: Lane[] = ['entries', 'files']
+/** A server that fails so often over one entry, while it answers, will go on failing. */
+const mostFaults = 4
+/** After each attempt that did not reach; the last one from then on. */
+const pausesMs = [2_000, 4_000, 8_000, 16_000, 32_000, 60_000]
+
+/**
+ * What is still to be sent: kept on the device before it is sent, sent in the order typed, each once, by one tab at a
+ * time, until the server has answered.
+ */
+export function makeOutbox(personId: string, store: Store, drafts: Drafts, tabs: Tabs) {
+  let state = emptyOutbox
+  const listeners = new Set<() => void>()
+  const sentListeners = new Set<(item: OutboxItem, answer: unknown) => void>()
+  const waiting = makeWaiting((awaited) => set({ awaited }))
+  const alone = oneTabAtATime(store)
+  const running = new Map<Lane, Promise<void>>()
+  const faults = new Map<string, number>()
+  let failures = 0
+  let timer: ReturnType<typeof setTimeout> | undefined
+
+  function set(change: Partial<OutboxState>): void {
+    state = { ...state, ...change }
+    listeners.forEach((listen) => listen())
+  }
+
+  async function read(): Promise<void> {
+    const items = await store.listItems().catch(() => null)
+    if (items) set({ items })
+  }
+
+  const ready = read()
+  tabs.listen('outbox', () => void read())
+  tabs.listen('sent', (text) => {
+    const { item, answer } = JSON.parse(text) as { item: OutboxItem; answer: unknown }
+    waiting.settle(item.id, { how: 'sent', answer })
+    sentListeners.forEach((hear) => hear(item, answer))
+  })
+
+  async function changed(): Promise<void> {
+    await read()
+    tabs.tell('outbox', '')
+  }
+
+  /** Sends what may go out, until nothing is left or the server is not reached. */
+  function run(lane: Lane): Promise<void> {
+    const now = running.get(lane)
+    // What was added meanwhile is found by the one that runs.
+    if (now) return now
+    const run = alone(`stillstand.${personId}.${lane}`, async () => {
+      await read()
+      for (let item = nextToSend(state.items, lane); item; item = nextToSend(state.items, lane))
+        if (!(await sendOne(item))) break
+    })
+      // The store or its lock failed: looked at again after a pause.
+      .catch(() => void (failures += 1))
+      .finally(() => {
+        running.delete(lane)
+        plan()
+      })
+    running.set(lane, run)
+    return run
+  }
+
+  function flush(): Promise<unknown> {
+    clearTimeout(timer)
+    return Promise.all(lanes.map(run))
+  }
+
+  /** A longer pause after each attempt that did not reach. */
+  function plan(): void {
+    clearTimeout(timer)
+    if (!lanes.some((lane) => !running.has(lane) && nextToSend(state.items, lane))) return
+    if (failures === 0) return void flush()
+    timer = setTimeout(() => void flush(), pausesMs[Math.min(failures, pausesMs.length) - 1])
+  }
+
+  const showProgress = (id: string, percent: number | null) => {
+    const { [id]: _, ...others } = state.sending
+    set({ sending: percent === null ? others : { ...others, [id]: percent } })
+  }
+
+  /** False where what follows must wait as well. */
+  async function sendOne(item: OutboxItem): Promise<boolean> {
+    const attempt = () => postItem(item, personId, (percent) => showProgress(item.id, percent))
+    showProgress(item.id, 0)
+    try {
+      const answer = await (waiting.isAwaited(item.id) ? askingWho(item, attempt) : attempt())
+      failures = 0
+      faults.delete(item.id)
+      set({ isOnline: true, isSignedOut: false })
+      await sent(item, answer)
+      return true
+    } catch (thrown) {
+      if (!(thrown instanceof ClientError)) throw thrown
+      if (isPassing(thrown) && !isHopeless(item, thrown)) {
+        failures += 1
+        set({ isOnline: thrown.status !== 0, isSignedOut: isSignedOut(thrown) })
+        waiting.settleAll((id) => state.items.some((one) => one.id === id && laneOf(one) === laneOf(item)))
+        return false
+      }
+      set({ isOnline: true })
+      await refused(item, thrown)
+      return true
+    } finally {
+      showProgress(item.id, null)
+    }
+  }
+
+  /** Whose session ended is asked for the password in place; who leaves that goes on without network, as it were. */
+  function askingWho(item: OutboxItem, attempt: () => Promise<unknown>): Promise<unknown> {
+    const patiently = () =>
+      attempt().catch((thrown: unknown) => {
+        if (isSignedOut(thrown)) waiting.holdOn(item.id)
+        throw thrown
+      })
+    const { label, what } = item.about
+    return keep(patiently, { what: label, ...(what ? { text: what } : {}) })
+  }
+
+  function isHopeless(item: OutboxItem, error: ClientError): boolean {
+    if (error.status !== 500) return false
+    const times = (faults.get(item.id) ?? 0) + 1
+    faults.set(item.id, times)
+    return times >= mostFaults
+  }
+
+  async function sent(item: OutboxItem, answer: unknown): Promise<void> {
+    await store.dropItem(item)
+    if (item.draft) {
+      const { key, value } = item.draft
+      // What was typed on since is a new entry's.
+      drafts.change(key, (now) => (JSON.stringify(now) === JSON.stringify(value) ? undefined : now))
+    }
+    await changed()
+    waiting.settle(item.id, { how: 'sent', answer })
+    sentListeners.forEach((hear) => hear(item, answer))
+    tabs.tell('sent', JSON.stringify({ item: { ...item, file: null }, answer }))
+  }
+
+  /** Beside the form where its author waits for it, else kept until a person decides; a file is kept in any case. */
+  async function refused(item: OutboxItem, error: ClientError): Promise<void> {
+    if (waiting.isAwaited(item.id) && !item.file) {
+      await store.dropItem(item)
+      waiting.refuse(item.id, error)
+    } else {
+      const { status, code, sentence, fields, detail } = error
+      await store.changeItem({ ...item, refusal: { status, code, sentence, fields, detail } })
+      waiting.settle(item.id, { how: 'kept' })
+    }
+    await changed()
+  }
+
+  return {
+    ready,
+    readAgain: changed,
+    flush: () => {
+      failures = 0
+      return flush()
+    },
+    state: () => state,
+
+    onChange(listen: () => void): () => void {
+      listeners.add(listen)
+      return () => void listeners.delete(listen)
+    },
+
+    onSent(hear: (item: OutboxItem, answer: unknown) => void): () => void {
+      sentListeners.add(hear)
+      return () => void sentListeners.delete(hear)
+    },
+
+    /** What another request found out. */
+    noteReached(isReached: boolean): void {
+      if (isReached !== state.isOnline) set({ isOnline: isReached })
+      if (isReached && failures > 0) {
+        failures = 0
+        plan()
+      }
+    },
+
+    /**
+     * 'sent' with the server's answer; 'kept' where it waits on the device. A refusal is thrown, as ClientError, while
+     * somebody waits for it. Whatever `replaces` says yes to goes in the same moment.
+     */
+    async send<T>(
+      entry: NewItem,
+      replaces: (item: OutboxItem) => boolean = () => false,
+    ): Promise<Outcome<T>> {
+      const item = newItem(entry)
+      const outcome = waiting.await<T>(item.id, item.file !== null)
+      await ready
+      try {
+        await store.addItem(item, state.items.filter(replaces))
+      } catch {
+        // A full or forbidden store: sent all the same, only not kept for later.
+        waiting.drop(item.id)
+        return { how: 'sent', answer: (await postItem(item, personId, () => undefined)) as T }
+      }
+      await changed()
+      const isHeld = !mayGoOut(state.items, item)
+      if (isHeld || (failures > 0 && !navigator.onLine)) waiting.settle(item.id, { how: 'kept' })
+      else void run(laneOf(item))
+      return outcome
+    },
+
+    /** Sent once more after it was refused, as it is or changed. */
+    async sendAgain(item: OutboxItem, change: Partial<Pick<OutboxItem, 'body' | 'url'>> = {}): Promise<void> {
+      await store.changeItem({ ...item, ...change, key: newItem(item).id, refusal: null })
+      await changed()
+      void run(laneOf(item))
+    },
+
+    async drop(item: OutboxItem): Promise<void> {
+      await store.dropItem(item)
+      waiting.settle(item.id, { how: 'kept' })
+      await changed()
+    },
+  }
+}
