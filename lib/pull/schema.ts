@@ -16,6 +16,10 @@ export type OpeningOfJar = z.output<typeof openingOfJar>
 export type TakingOut = z.output<typeof takingOut>
 export type MissedJar = z.output<typeof missedJar>
 
+/** Readings of one save, taken back by whoever saved them. */
+export const undoneSave = z.object({ readings: z.array(z.uuid()).min(1, 'Say which readings.').max(60) })
+export type UndoneSave = z.output<typeof undoneSave>
+
 const day = z.iso.date()
 
 /** Pulls that leave a closed day, each with the day on which it stood when this was chosen. */
@@ -38,5 +42,6 @@ export const pullKeys = {
   open: (pullJarId: string) => `/api/pulls/${pullJarId}/open`,
   takeOut: (pullJarId: string) => `/api/pulls/${pullJarId}/take-out`,
   miss: (pullJarId: string) => `/api/pulls/${pullJarId}/miss`,
+  undo: (pullJarId: string) => `/api/pulls/${pullJarId}/undo`,
   readings: (pullJarId: string) => `/api/pulls/${pullJarId}/readings`,
 }

@@ -4,7 +4,7 @@ import { assertFinite, assertNumbers } from './guard'
 import { doubtsOf } from './judge-day'
 import { mean, rangeOf } from './mean'
 import type { Evidence, RuleFinding, SeriesInput } from './series'
-import { torqueDoubt, torqueErrorPercent } from './viscosity'
+import { bandShare, torqueDoubtWithin, torqueErrorPercent } from './viscosity'
 
 /** A value as it stands on the pull screen, before it is saved. */
 export type Entry = {
@@ -53,13 +53,12 @@ export function doubtOnEntry(input: SeriesInput, entry: Entry): RuleFinding[] {
 function torqueEvidence(entry: Entry, room: number, value: number): Evidence | null {
   const { torquePercent } = entry
   if (torquePercent === undefined || value === 0) return null
-  const bandPercent = Number.isFinite(room) ? (100 * Math.max(0, room)) / Math.abs(value) : undefined
-  const reason = torqueDoubt(torquePercent, bandPercent)
+  const reason = torqueDoubtWithin(torquePercent, room, value)
   if (reason === null) return null
   return {
     torquePercent,
     errorPercent: torqueErrorPercent(torquePercent),
-    bandPercent: bandPercent ?? null,
+    bandPercent: bandShare(room, value) ?? null,
     reason,
   }
 }

@@ -68,6 +68,16 @@ export function torqueDoubt(torquePercent: number, bandPercent?: number): string
   return null
 }
 
+/** The same for a reading of `value` whose initial lies `room` away from the nearer edge of its band. */
+export function torqueDoubtWithin(torquePercent: number, room: number, value: number): string | null {
+  return torqueDoubt(torquePercent, bandShare(room, value))
+}
+
+/** The way to the nearer edge in % of the reading; undefined where there is no edge. */
+export function bandShare(room: number, value: number): number | undefined {
+  return Number.isFinite(room) && value !== 0 ? (100 * Math.max(0, room)) / Math.abs(value) : undefined
+}
+
 function show(percent: number): string {
   return percent.toFixed(1)
 }

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { claimedInstant } from '@/lib/reading/rules/claimed-time'
+import { askedConditions } from '@/lib/reading/rules/conditions'
 import { conditionDoubts, cycleDoubts } from '@/lib/reading/rules/entry-doubts'
 import { massChangePercent } from '@/lib/science/mass-change'
 import { ImpossibleEntry, valueOf, type TypedEntry, type ValueContext } from '@/lib/reading/rules/value'
@@ -124,7 +125,16 @@ describe('R06: when it was measured', () => {
 })
 
 describe('conditions', () => {
-  const initial = { spindle: 'T-bar C', rpm: 10, sampleTemperatureC: 25 }
+  const initial = askedConditions(
+    { spindle: 'T-bar C', rpm: 10 },
+    { method: 'T-bar D, 5 rpm, 30 s, descending, unstirred, at 25 °C' },
+  )
+  it('are the initial’s own, and what it does not say is as its method says', () => {
+    expect(initial).toEqual({
+      ...{ spindle: 'T-bar C', rpm: 10, seconds: 30, path: 'descending' },
+      ...{ restMinutes: null, sampleTemperatureC: 25 },
+    })
+  })
   const good = { code: 'V1', dueOn: '2027-01-04', result: 'good' }
   it('are no doubt where they are the initial’s', () => {
     expect(conditionDoubts({ instrument: good, ...initial }, initial, '2026-12-01')).toEqual([])
@@ -136,6 +146,8 @@ describe('conditions', () => {
     [{ spindle: 'T-bar D' }, /spindle T-bar D instead of the initial's T-bar C/],
     [{ rpm: 20 }, /20 rpm instead of 10/],
     [{ sampleTemperatureC: 26.5 }, /sample at 26.5 °C/],
+    [{ seconds: 60 }, /60 s instead of 30 s/],
+    [{ path: 'fixed' as const }, /a fixed spindle instead of a descending one/],
     [{ instrument: { ...good, dueOn: '2026-11-30' } }, /V1 was due on 30 Nov 2026/],
     [{ instrument: { ...good, result: 'doubtful' } }, /last calibration of V1 was doubtful/],
     [{ instrument: { code: 'V1', dueOn: null, result: null } }, /no calibration on record/],

@@ -71,11 +71,15 @@ function wishOf(frame: Frame, want: WantedFlag, spares: FrameSpare[]): Wish[] {
     (repeat) => repeat.repeatOf === repeatOf && repeat.state !== 'missed',
   )
   if (given.filter((repeat) => repeat.attribute === want.attribute).length >= (wantsThird ? 2 : 1)) return []
+  const { pullId } = reading
   const index = spares.findIndex(
-    (spare) => spare.batchId === want.batchId && spare.studyStationId === want.studyStationId,
+    (spare) =>
+      spare.batchId === want.batchId &&
+      spare.studyStationId === want.studyStationId &&
+      !spare.missedIn.includes(pullId),
   )
   const [spare = null] = index === -1 ? [] : spares.splice(index, 1)
-  return [{ want, pullId: reading.pullId, repeatOf, spare }]
+  return [{ want, pullId, repeatOf, spare }]
 }
 
 function withJar(frame: Frame, want: WantedFlag, spare: FrameSpare | null): WantedFlag {

@@ -1,6 +1,7 @@
 import { AppError } from '@/lib/http/errors'
 import { type AttributeKey, attributeName } from '@/lib/reading/schema/attributes'
 import { conditionDoubts, cycleDoubts, valueDoubts, type EntryDoubt } from '@/lib/reading/rules/entry-doubts'
+import { askedConditions, conditionsIn } from '@/lib/reading/rules/conditions'
 import { weeksSince } from '@/lib/science/months'
 import type { Frame } from '@/lib/series/queries/frame'
 import { seriesUnits } from '@/lib/series/rules/input'
@@ -55,12 +56,12 @@ export function judgeEntries(
           sentenceContext(frame.study, station, key),
         )
       : []
-    for (const { entry, path, instrument, read } of own) {
+    for (const { entry, path, planned: asked, instrument, read } of own) {
       const found = [
         ...ofValue.map(({ reason, sentence }) => ({ reason, sentence })),
         ...conditionDoubts(
-          usedIn(read.detail, instrument),
-          initialIn(frame, jar, key),
+          { instrument, ...conditionsIn(read.detail) },
+          askedConditions(initialDetail(frame, jar, key), asked),
           dayIn(frame.study.zone, measuredAt),
         ),
         ...common,
@@ -104,30 +105,9 @@ function weakestTorque(entries: readonly ReadEntry[]): { torquePercent?: number 
   return { torquePercent: torques.find((torque) => torque > 100) ?? Math.min(...torques) }
 }
 
-function usedIn(detail: Record<string, unknown>, instrument: ReadEntry['instrument']) {
-  return { instrument, ...conditionsIn(detail) }
-}
-
-function initialIn(frame: Frame, jar: PullJar, attribute: string) {
+function initialDetail(frame: Frame, jar: PullJar, attribute: string) {
   const initial = frame.readings.find(
     (row) => row.studyStationId === null && row.batchId === jar.batchId && row.attribute === attribute,
   )
-  const found = conditionsIn(initial?.detail ?? {})
-  const torque = initial?.detail['torque']
-  return torque && typeof torque === 'object'
-    ? {
-        ...found,
-        ...conditionsIn(torque as Record<string, unknown>),
-        sampleTemperatureC: found.sampleTemperatureC,
-      }
-    : found
-}
-
-function conditionsIn(detail: Record<string, unknown>) {
-  const number = (key: string) => (typeof detail[key] === 'number' ? detail[key] : null)
-  return {
-    spindle: typeof detail['spindle'] === 'string' ? detail['spindle'] : null,
-    rpm: number('rpm'),
-    sampleTemperatureC: number('sampleTemperatureC'),
-  }
+  return initial?.detail ?? null
 }

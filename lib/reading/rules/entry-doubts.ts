@@ -3,23 +3,12 @@ import { ScienceError } from '@/lib/science/guard'
 import type { RuleFinding, SeriesInput } from '@/lib/science/series'
 import { sentenceOf, type SentenceContext } from '@/lib/science/sentence'
 import { spokenDay } from '@/lib/study/rules/calendar'
+import { changedConditions, type Conditions } from './conditions'
 
 export type EntryDoubt = { reason: string; sentence: string }
 
-export type UsedConditions = {
-  instrument: { code: string; dueOn: string | null; result: string | null } | null
-  spindle: string | null
-  rpm: number | null
-  sampleTemperatureC: number | null
-}
-export type InitialConditions = {
-  spindle: string | null
-  rpm: number | null
-  sampleTemperatureC: number | null
-}
+export type UsedInstrument = { code: string; dueOn: string | null; result: string | null }
 
-/** Further off than this from the initial's sample, a viscosity or a pH is another number [practice]. */
-const temperatureToleranceC = 1
 /** A freezer's half that stops this far short of its mark did not freeze what it should [practice]. */
 const cycleToleranceC = 3
 
@@ -48,56 +37,29 @@ function findings(input: SeriesInput, entry: SeenEntry): RuleFinding[] {
   }
 }
 
-/** Readings compare only under the initial's conditions and with an instrument that can be trusted. */
+/** Readings compare only with an instrument that can be trusted and under the initial's conditions. */
 export function conditionDoubts(
-  used: UsedConditions,
-  initial: InitialConditions,
+  used: Conditions & { instrument: UsedInstrument | null },
+  initial: Conditions,
   measuredOn: string,
 ): EntryDoubt[] {
-  const doubts: EntryDoubt[] = []
-  const { instrument } = used
-  if (instrument?.result === 'doubtful') {
-    doubts.push({
-      reason: 'calibration',
-      sentence: `The last calibration of ${instrument.code} was doubtful. Calibrate it and measure again.`,
-    })
-  } else if (instrument && instrument.dueOn === null) {
-    doubts.push({
-      reason: 'calibration',
-      sentence: `${instrument.code} has no calibration on record. Calibrate it and measure again.`,
-    })
-  } else if (instrument?.dueOn && instrument.dueOn < measuredOn) {
-    doubts.push({
-      reason: 'calibration',
-      sentence: `The calibration of ${instrument.code} was due on ${spokenDay(instrument.dueOn)}. Calibrate it and measure again.`,
-    })
-  }
+  const calibration = instrumentDoubt(used.instrument, measuredOn)
   const changed = changedConditions(used, initial)
-  if (changed.length > 0) {
-    doubts.push({
-      reason: 'conditions',
-      sentence: `Measured with ${changed.join(' and ')}; such readings do not compare. Measure again as at the start.`,
-    })
-  }
-  return doubts
+  return [
+    ...(calibration ? [{ reason: 'calibration', sentence: calibration }] : []),
+    ...(changed ? [{ reason: 'conditions', sentence: changed }] : []),
+  ]
 }
 
-function changedConditions(used: UsedConditions, initial: InitialConditions): string[] {
-  const changed: string[] = []
-  if (used.spindle && initial.spindle && used.spindle !== initial.spindle) {
-    changed.push(`spindle ${used.spindle} instead of the initial's ${initial.spindle}`)
-  }
-  if (used.rpm !== null && initial.rpm !== null && used.rpm !== initial.rpm) {
-    changed.push(`${used.rpm} rpm instead of ${initial.rpm}`)
-  }
-  if (
-    used.sampleTemperatureC !== null &&
-    initial.sampleTemperatureC !== null &&
-    Math.abs(used.sampleTemperatureC - initial.sampleTemperatureC) > temperatureToleranceC
-  ) {
-    changed.push(`the sample at ${used.sampleTemperatureC} °C instead of ${initial.sampleTemperatureC} °C`)
-  }
-  return changed
+function instrumentDoubt(instrument: UsedInstrument | null, measuredOn: string): string | null {
+  if (!instrument) return null
+  const { code, dueOn, result } = instrument
+  if (result === 'doubtful')
+    return `The last calibration of ${code} was doubtful. Calibrate it and measure again.`
+  if (dueOn === null) return `${code} has no calibration on record. Calibrate it and measure again.`
+  if (dueOn < measuredOn)
+    return `The calibration of ${code} was due on ${spokenDay(dueOn)}. Calibrate it and measure again.`
+  return null
 }
 
 export type FreezeThawPlace = { cycleLowC: number | null; cycleHighC: number | null }

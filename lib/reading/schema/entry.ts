@@ -1,4 +1,5 @@
 import { z } from '@/lib/http/zod'
+import { paths } from '../rules/conditions'
 import { attributeKey } from './attributes'
 
 const measured = z.number().min(-1e12).max(1e12)
@@ -16,6 +17,10 @@ export const entryDetail = z.strictObject({
   grossG: measured.optional(),
   word: z.string().max(60).optional(),
   sampleTemperatureC: measured.optional(),
+  /** Of a viscosity: when it was read after the start, how the spindle moved, how long the jar had stood. */
+  seconds: z.number().positive('Seconds are above 0.').max(86_400).optional(),
+  path: z.enum(paths).optional(),
+  restMinutes: z.number().min(0).max(100_000).optional(),
 })
 export type EntryDetail = z.infer<typeof entryDetail>
 

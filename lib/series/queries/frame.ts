@@ -29,6 +29,8 @@ export type FrameSpare = {
   studyStationId: string
   shelf: number | null
   place: number | null
+  /** Pulls in which it was asked for and given up. */
+  missedIn: string[]
 }
 export type FrameReading = Awaited<ReturnType<typeof listFrameReadings>>[number]
 export type FrameFlag = Awaited<ReturnType<typeof listFrameFlags>>[number]
@@ -74,7 +76,9 @@ async function getFrameStudy(db: Db | Trx, studyId: string) {
         from pull_jar pj join jar j on j.id = pj.jar_id
         where pj.study_id = s.id and pj.repeat_of is not null) as repeats,
       (select coalesce(jsonb_agg(jsonb_build_object('id', j.id, 'code', j.code, 'batchId', j.batch_id,
-          'studyStationId', j.study_station_id, 'shelf', j.shelf, 'place', j.place) order by j.shelf, j.place, j.code), '[]')
+          'studyStationId', j.study_station_id, 'shelf', j.shelf, 'place', j.place,
+          'missedIn', (select coalesce(jsonb_agg(pj.pull_id), '[]') from pull_jar pj where pj.jar_id = j.id))
+          order by j.shelf, j.place, j.code), '[]')
         from jar j where j.study_id = s.id and j.kind = 'spare' and j.state = 'stored'
           and not exists (select 1 from pull_jar pj where pj.jar_id = j.id and pj.state <> 'missed')) as spares
     from study s where s.id = ${studyId}

@@ -1,0 +1,93 @@
+import { sql } from 'kysely'
+import type { Actor } from '@/lib/auth/actor'
+import type { Trx } from '@/lib/db/client'
+import { newId } from '@/lib/db/id'
+import { refuse } from '@/lib/http/errors'
+import { lockStudyOfPullJar, recomputeSeries } from '@/lib/series/commands'
+import { findPullJar, type PullJar } from '../queries/pull-jar'
+import { isUndone, refuseUndo, undoneReason, type SavedReading } from '../rules/undo'
+import type { UndoneSave } from '../schema'
+
+/**
+ * Takes one save back: its readings are voided and stay on record, the jar is due or resting again, spare jars that it
+ * called for are called for no more where nothing was read of them, and what it touched is computed anew.
+ */
+export async function undoSave(trx: Trx, actor: Actor, pullJarId: string, input: UndoneSave) {
+  await lockStudyOfPullJar(trx, pullJarId)
+  const jar = await findPullJar(trx, pullJarId)
+  if (!jar) throw refuse.notFound('There is no such jar in a pull.')
+  const saved = await listSaved(trx, pullJarId, input.readings)
+  if (saved.length < new Set(input.readings).size)
+    throw refuse.notFound(`These readings of ${jar.code} are not on record. Reload to see what is.`)
+  if (saved.every(isUndone)) return { version: jar.version, state: jar.state, takenBack: [] }
+  refuseUndo(actor, jar, saved)
+  await trx
+    .insertInto('reading')
+    .values(
+      saved.map(({ id, recordedAt: _at, isVoid: _void, newer: _newer, ...place }) => ({
+        ...place,
+        id: newId(),
+        typed: '',
+        isVoid: true,
+        supersedesId: id,
+        reason: undoneReason,
+        recordedBy: actor.personId,
+      })),
+    )
+    .execute()
+  const touched = [...new Set(saved.map((reading) => reading.attribute))]
+  const takenBack = await takeRepeatsBack(trx, jar, touched)
+  const reopened = await reopenJar(trx, jar)
+  const recomputed = await recomputeSeries(trx, actor, jar.studyId, { only: touched })
+  return { ...reopened, takenBack, ...recomputed }
+}
+
+async function listSaved(trx: Trx, pullJarId: string, ids: readonly string[]) {
+  return trx
+    .selectFrom('reading as r')
+    .select(['r.id', 'r.studyId', 'r.batchId', 'r.studyStationId', 'r.pullJarId', 'r.jarId'])
+    .select(['r.attribute', 'r.replicate', 'r.measuredAt', 'r.claimedAt', 'r.recordedBy', 'r.recordedAt'])
+    .select(['r.isVoid', 'r.supersedesId'])
+    .select(
+      sql<SavedReading['newer']>`(select jsonb_build_object('isVoid', newer.is_void, 'reason', newer.reason,
+          'by', person.name) from reading newer join person on person.id = newer.recorded_by
+        where newer.supersedes_id = r.id)`.as('newer'),
+    )
+    .where('r.pullJarId', '=', pullJarId)
+    .where('r.id', 'in', [...ids])
+    .execute()
+}
+
+/** Codes of the spare jars that are at rest again. What was read, opened by a photo or given up stays. */
+async function takeRepeatsBack(trx: Trx, jar: PullJar, attributes: readonly string[]): Promise<string[]> {
+  const { rows } = await sql<{ code: string }>`
+    with gone as (
+      delete from pull_jar pj where pj.repeat_of = ${jar.repeatOf ?? jar.id} and pj.id <> ${jar.id}
+        and pj.attribute = any(${attributes as string[]}) and pj.state in ('due', 'resting')
+        and not exists (select from reading r where r.pull_jar_id = pj.id)
+        and not exists (select from photo p where p.pull_jar_id = pj.id)
+      returning pj.jar_id
+    ), moved as (
+      update jar set state = 'stored', version = version + 1
+        where id in (select jar_id from gone) and state = 'resting'
+    )
+    select jar.code from jar where jar.id in (select jar_id from gone) order by jar.code
+  `.execute(trx)
+  return rows.map((row) => row.code)
+}
+
+/** As it was before the save: resting where it had been taken out, else due; nothing is spent. */
+async function reopenJar(trx: Trx, jar: PullJar): Promise<{ version: number; state: string }> {
+  if (jar.state !== 'done') return { version: jar.version, state: jar.state }
+  const [state, jarState] = jar.takenAt ? ['resting', 'resting'] : ['due', 'stored']
+  const { rows } = await sql<{ version: number }>`
+    with moved as (
+      update jar set state = ${jarState}, version = version + 1
+        where id = ${jar.jarId} and state <> ${jarState} and state <> 'lost'
+    )
+    update pull_jar set state = ${state}, version = version + 1, closed_at = null, closed_by = null, note = ''
+      where id = ${jar.id}
+      returning version
+  `.execute(trx)
+  return { version: rows[0]!.version, state }
+}
