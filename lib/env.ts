@@ -1,4 +1,4 @@
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 
 /**
  * Everything the programs read from the environment, checked in one place; README.md documents it in one table.

@@ -1,5 +1,5 @@
 import { emulsionTypes } from '@/lib/formula/schema'
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 import { deviceTimes } from '@/lib/reading/schema/entry'
 
 export const batchStates = ['making', 'resting', 'released', 'rejected'] as const

@@ -1,4 +1,4 @@
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 
 export const benchDay = z.object({ today: z.iso.date().optional() })
 export const benchJarAddress = z.object({ code: z.string().trim().min(1).max(60) })

@@ -1,4 +1,4 @@
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 
 /** Two or three buffers, as the meter showed them. */
 const meterCheck = z.object({

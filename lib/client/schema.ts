@@ -1,4 +1,4 @@
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 
 const name = z.string().trim().min(1, 'Name the client.').max(120)
 

@@ -1,4 +1,4 @@
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 
 const instant = z.iso.datetime({ offset: true })
 

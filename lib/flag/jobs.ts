@@ -1,7 +1,7 @@
 import type { Db } from '@/lib/db/client'
 import { transact } from '@/lib/db/transact'
 import { env } from '@/lib/env'
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 import { job } from '@/lib/jobs/job'
 import { sendMail } from '@/lib/mail/send'
 import { lockStudy } from '@/lib/series/commands'

@@ -1,4 +1,4 @@
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 
 export const flagCauses = ['product', 'measurement', 'instrument', 'station', 'not known'] as const
 export type FlagCause = (typeof flagCauses)[number]

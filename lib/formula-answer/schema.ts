@@ -1,5 +1,5 @@
 import { checkKeys } from '@/lib/formula/rules/checks/check'
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 
 export const answerKinds = ['answered', 'set aside'] as const
 

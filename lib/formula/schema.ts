@@ -1,4 +1,4 @@
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 import { density, inciName, priceCentsPerKg } from '@/lib/ingredient/schema'
 
 export const emulsionTypes = ['water-in-oil', 'water-in-silicone', 'oil-in-water'] as const

@@ -1,4 +1,4 @@
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 
 const day = z.iso
   .date('Write the day as 2026-12-24.')

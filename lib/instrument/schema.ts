@@ -1,4 +1,4 @@
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 
 const instrumentFields = {
   code: z.string().trim().min(1, 'Give the instrument a code.').max(20),

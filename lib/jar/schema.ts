@@ -1,4 +1,4 @@
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 
 /** As scanned or typed; read by `readJarCode`. */
 export const jarAddress = z.object({ code: z.string().trim().min(1).max(200) })

@@ -1,6 +1,6 @@
 import type { Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
-import type { z } from '@/lib/http/zod'
+import type * as z from '@/lib/http/zod'
 import type { QueueName } from './queues'
 
 /** The actor is the system's own; its request id is the job's, so that the trail tells which job wrote. */

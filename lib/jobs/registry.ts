@@ -1,4 +1,4 @@
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 import { jobs as flagJobs } from '@/lib/flag/jobs'
 import { jobs as personJobs } from '@/lib/person/jobs'
 import { makePhotoPreview, previewQueue } from '@/lib/photo/jobs'

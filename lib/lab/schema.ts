@@ -1,6 +1,6 @@
 import { shortestPassword } from '@/lib/person/rules'
 import { email, initials, personName } from '@/lib/person/schema'
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 import { labelGrid } from '@/lib/label/schema'
 
 const labName = z.string().trim().min(1, 'Name the lab.').max(120)

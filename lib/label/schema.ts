@@ -1,4 +1,4 @@
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 import { genericGrids } from './rules/grid'
 import { gridFaults } from './rules/layout'
 

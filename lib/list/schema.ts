@@ -1,4 +1,4 @@
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 
 /** How a column's values are compared and written: as text, number, day, or instant. */
 export type ValueKind = 'text' | 'number' | 'day' | 'instant'

@@ -3,7 +3,7 @@ import path from 'node:path'
 import type { Db } from '@/lib/db/client'
 import { env } from '@/lib/env'
 import { refuse } from '@/lib/http/errors'
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 import { findLab } from '@/lib/lab/queries'
 import { mailFolder } from './fake'
 

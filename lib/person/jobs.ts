@@ -1,7 +1,7 @@
 import { createToken, type TokenKind } from '@/lib/auth/token'
 import { transact } from '@/lib/db/transact'
 import { env } from '@/lib/env'
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 import { job, type JobContext } from '@/lib/jobs/job'
 import { findLab } from '@/lib/lab/queries'
 import { sendMail } from '@/lib/mail/send'

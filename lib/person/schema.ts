@@ -1,5 +1,5 @@
 import { roles } from '@/lib/auth/actor'
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 
 // No line breaks or other control characters: names stand in mails, logs and reports.
 const line = (what: string, max: number) =>

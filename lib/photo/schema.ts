@@ -1,4 +1,4 @@
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 import { deviceTimes } from '@/lib/reading/schema/entry'
 
 export const photoAddress = z.object({ id: z.uuid() })

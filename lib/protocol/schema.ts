@@ -1,4 +1,4 @@
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 import { attributeKey } from '@/lib/reading/schema/attributes'
 import { isOwn, ownAttribute } from '@/lib/reading/schema/own'
 

@@ -1,4 +1,4 @@
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 
 export const pullJarAddress = z.object({ id: z.uuid() })
 const version = z.number().int().positive()

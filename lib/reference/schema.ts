@@ -1,5 +1,5 @@
 import { emulsionTypes } from '@/lib/formula/schema'
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 
 /** A lot of a bought-in product: what is known of it without its formula. */
 export const newReference = z.object({

@@ -1,5 +1,5 @@
 import { sql } from 'kysely'
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 import { job } from '@/lib/jobs/job'
 
 export const jobs = [

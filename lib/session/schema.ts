@@ -1,5 +1,5 @@
 import { email } from '@/lib/person/schema'
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 
 const typed = (what: string) => z.string().min(1, what).max(1000)
 const link = z.string().trim().min(1, 'Open the link in the mail again.').max(200)

@@ -1,5 +1,5 @@
 import { sql, type SqlBool } from 'kysely'
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 import { env } from '@/lib/env'
 import { job } from '@/lib/jobs/job'
 import { sendMail } from '@/lib/mail/send'

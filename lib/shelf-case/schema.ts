@@ -1,4 +1,4 @@
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 
 export const caseKinds = ['real time', 'provisional'] as const
 export const caseStates = ['drafting', 'put forward', 'sent back', 'signed', 'superseded'] as const

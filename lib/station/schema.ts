@@ -1,4 +1,4 @@
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 import { zeroCelsius } from '@/lib/science/kelvin'
 
 const degrees = z.number().gt(-zeroCelsius, 'That is below absolute zero.').max(400).nullable()

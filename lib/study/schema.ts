@@ -1,4 +1,4 @@
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 import { tolerance } from '@/lib/protocol/schema'
 import { attributeKey } from '@/lib/reading/schema/attributes'
 import { entryDetail } from '@/lib/reading/schema/entry'

@@ -6,7 +6,7 @@ import { GET as getProfile } from '@/app/api/session/route'
 import { newId } from '@/lib/db/id'
 import { refuse } from '@/lib/http/errors'
 import { read, upload, write } from '@/lib/http/route'
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 import { call } from '../support/call'
 import { testDatabase, type Signed, type TestDatabase } from '../support/database'
 

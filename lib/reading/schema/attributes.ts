@@ -1,4 +1,4 @@
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 import { isOwn, ownKey, ownName, type OwnAttribute, type OwnKey } from './own'
 
 /**

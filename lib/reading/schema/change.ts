@@ -1,4 +1,4 @@
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 import { entryDetail } from './entry'
 
 const reason = z.string().trim().min(1, 'A reading is changed only with a reason. Say why.').max(500)

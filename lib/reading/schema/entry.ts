@@ -1,4 +1,4 @@
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 import { paths } from '../rules/conditions'
 import { attributeKey } from './attributes'
 

@@ -1,4 +1,4 @@
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 
 /** A protocol's own attribute is called by its key: "own.Foam-height" is foam height wherever it is named. */
 export type OwnKey = `own.${string}`
