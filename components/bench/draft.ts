@@ -1,4 +1,5 @@
 import type { BenchField } from '@/lib/bench/rules'
+import { kindEntry, layersEntry } from '@/components/bench/kind-entry'
 import { newId } from '@/lib/db/id'
 import type { EntryDetail } from '@/lib/reading/schema/entry'
 import { readTyped } from '@/lib/reading/schema/typed'
@@ -6,7 +7,7 @@ import { readTyped } from '@/lib/reading/schema/typed'
 /** One input of the jar's screen. Layers have two; a replicate is an input of its own. */
 export type Slot = {
   key: string
-  kind: 'number' | 'torque' | 'gross' | 'layer' | 'word'
+  kind: 'number' | 'torque' | 'gross' | 'layer' | 'word' | 'type' | 'colour' | 'droplets' | 'centrifuge'
   field: BenchField
   replicate: number
   part?: 'top' | 'bottom'
@@ -35,8 +36,8 @@ export function slotsOf(fields: BenchField[], hasMass: boolean): Slot[] {
         { key: `${field.attribute}.bottom`, kind: 'layer', field, replicate: 1, part: 'bottom' },
       ]
     const kind =
-      field.kind === 'word'
-        ? 'word'
+      field.kind !== 'torque' && field.kind !== 'number'
+        ? field.kind
         : field.kind === 'torque' && field.viscosity
           ? 'torque'
           : field.attribute === 'mass' && hasMass
@@ -78,15 +79,8 @@ export function entriesOf(
       ...(instrument ? { instrumentId: instrument } : {}),
     }
     if (slot.kind === 'layer') {
-      const [top, bottom] = [text(`${slot.field.attribute}.top`), text(`${slot.field.attribute}.bottom`)]
-      if (top === '' && bottom === '') return []
-      const height = fillHeightMm === null ? {} : { totalMm: fillHeightMm }
-      const detail = {
-        topMm: readTyped(top || '0') ?? NaN,
-        bottomMm: readTyped(bottom || '0') ?? NaN,
-        ...height,
-      }
-      return [{ ...base, typed: `${top || '0'} mm top, ${bottom || '0'} mm below`, detail }]
+      const read = layersEntry(slot.field.attribute, text, fillHeightMm)
+      return read ? [{ ...base, ...read }] : []
     }
     const typed = text(slot.key)
     if (typed === '') return []
@@ -105,7 +99,7 @@ export function entriesOf(
         },
       ]
     if (slot.kind === 'gross') return [{ ...base, typed, detail: { grossG: value } }]
-    return [{ ...base, typed, detail: {} }]
+    return [{ ...base, ...kindEntry(slot, typed, text) }]
   })
 }
 

@@ -1,4 +1,6 @@
 import { KeepButton, whyNotKeep } from '@/components/bench/keep-button'
+import { hasOwnPanel, KindPanel } from '@/components/bench/kind-panel'
+import { LayerExtras } from '@/components/bench/layer-extras'
 import { NotePanel, PhotoPanel, WordPanel } from '@/components/bench/other-panels'
 import type { JarEntry } from '@/components/bench/use-jar-entry'
 import { ValuePanel } from '@/components/bench/value-panel'
@@ -27,10 +29,11 @@ export function FieldPanel({
       onStep={entry.open.some((s) => s.key !== entry.at) ? entry.step : null}
     />
   )
+  const read = (key: string) => entry.draft.texts[key] ?? ''
   return (
     <div className="flex-1 bg-typed px-4 pb-5 pt-4 sm:px-7">
       <ErrorNote error={entry.error} />
-      {here && here.slot.kind !== 'word' ? (
+      {here && here.slot.kind !== 'word' && !hasOwnPanel(here.slot) ? (
         <ValuePanel
           jar={jar}
           slot={here.slot}
@@ -44,7 +47,15 @@ export function FieldPanel({
         />
       ) : (
         <>
-          {here ? (
+          {here && hasOwnPanel(here.slot) ? (
+            <KindPanel
+              slot={here.slot}
+              text={here.text}
+              verdict={here.verdict}
+              read={read}
+              type={entry.type}
+            />
+          ) : here ? (
             <WordPanel slot={here.slot} text={here.text} onText={(text) => entry.type(here.key, text)} />
           ) : null}
           {entry.at === 'note' ? <NotePanel note={entry.draft.note} onNote={entry.note} /> : null}
@@ -52,6 +63,9 @@ export function FieldPanel({
           <div className="ml-auto mt-4 max-w-[300px]">{keepButton}</div>
         </>
       )}
+      {here?.slot.kind === 'layer' ? (
+        <LayerExtras slot={here.slot} text={here.text} read={read} type={entry.type} />
+      ) : null}
     </div>
   )
 }

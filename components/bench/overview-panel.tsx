@@ -49,7 +49,7 @@ export function OverviewPanel({ jar, entry, onChange }: Props) {
                   </span>
                 </span>
                 <span className="hidden sm:block">
-                  {slot.kind === 'word' ? null : (
+                  {slot.field.words ? null : (
                     <BandBar
                       width={150}
                       lower={slot.field.band?.lower ?? null}

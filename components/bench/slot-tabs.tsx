@@ -1,4 +1,5 @@
 import type { JarEntry } from '@/components/bench/use-jar-entry'
+import { hasOwnPanel } from '@/components/bench/kind-panel'
 import { slotLabel, slotUnit, type Verdict } from '@/components/bench/verdict'
 
 /** The jar's fields in the order of the protocol; a check mark for what is in. */
@@ -35,7 +36,9 @@ export function SlotTabs({ entry, hasPhotos }: { entry: JarEntry; hasPhotos: boo
             text={
               tab.text === ''
                 ? 'not yet'
-                : `${tab.text} ${tab.slot.kind === 'word' ? '' : slotUnit(tab.slot)}`
+                : hasOwnPanel(tab.slot)
+                  ? tab.text
+                  : `${tab.text} ${tab.slot.kind === 'word' ? '' : slotUnit(tab.slot)}`
             }
             isHere={tab.key === at}
             mark={markOf(tab.verdict)}

@@ -1,7 +1,8 @@
 import { shownValue } from '@/lib/study/rules/words'
 import type { DraftEntry, Slot } from '@/components/bench/draft'
 import type { BenchField } from '@/lib/bench/rules'
-import { ImpossibleEntry, valueOf } from '@/lib/reading/rules/value'
+import { ImpossibleEntry } from '@/lib/reading/rules/impossible-entry'
+import { valueOf } from '@/lib/reading/rules/value'
 import { bandUsed, isNearEdge } from '@/lib/science/band'
 import { percentOf } from '@/lib/science/percent'
 
@@ -24,8 +25,8 @@ export function verdictOf(field: BenchField, entry: DraftEntry | undefined, jar:
   if (!entry) return { state: 'empty' }
   try {
     const last = field.last[0]?.value ?? null
-    const planned = field.viscosity ? { viscosity: field.viscosity } : {}
-    const { value } = valueOf(entry, { planned, jar, spindles: [], last })
+    const { planned, initialDetail: initial, emulsionType } = field
+    const { value } = valueOf(entry, { planned, jar, spindles: [], last, initial, emulsionType })
     return judged(field, value)
   } catch (error) {
     if (!(error instanceof ImpossibleEntry)) throw error

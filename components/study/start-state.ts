@@ -2,7 +2,7 @@ import { readDecimal } from '@/lib/number/rules'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
 import { jarsOfPlan, stationName } from '@/lib/protocol/rules/plan'
 import type { ProtocolRow } from '@/lib/protocol/queries'
-import { startsAtZero, attributeOf } from '@/lib/reading/schema/attributes'
+import { startsAtZero, attributeOf, toldFromInitial } from '@/lib/reading/schema/attributes'
 import { jarsFromGrams } from '@/lib/science/jar-grams'
 import type { ReleasedBatch } from '@/lib/study/queries/batches'
 import type { LabWorkload } from '@/lib/study/queries/workload'
@@ -196,6 +196,7 @@ export function initialAttributes(plan: ProtocolPlan) {
   return plan.attributes.filter(
     (planned) =>
       planned.isInitialOnly ||
+      toldFromInitial(planned) ||
       planned.tolerance.kind !== 'range' ||
       !startsAtZero(attributeOf(planned.attribute, planned)),
   )

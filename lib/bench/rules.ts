@@ -34,6 +34,11 @@ export type BenchField = {
   method: string
   /** Given where torque is typed: mPa·s = torque % × spindleConstant ÷ rpm. */
   viscosity: { spindle: string; spindleConstant: number; rpm: number } | null
+  /** What the protocol says of it, as a value is made of what is typed. */
+  planned: PlannedAttribute
+  /** How the batch's own initial was come by, and what its emulsion is: a difference is told from them. */
+  initialDetail: Record<string, unknown> | null
+  emulsionType: string | null
   band: Band | null
   initial: number | null
   /** The newest first; one on the Bench, three on a jar's own screen. */
@@ -49,6 +54,7 @@ export type JarOfBench = {
   asks: string
   attribute: string | null
   plan: ProtocolPlan
+  emulsionType: string | null
   /** Of its station in the plan. */
   position: number
   timeWeeks: number
@@ -97,6 +103,9 @@ function fieldOf(planned: PlannedAttribute, jar: JarOfBench, values: Values): Be
     replicates: jar.asks === 'watch' ? 1 : planned.replicates,
     method: planned.method,
     viscosity: planned.viscosity ?? null,
+    planned,
+    initialDetail: values.initials.find(isHere)?.detail ?? null,
+    emulsionType: jar.emulsionType,
     band: series?.band ?? bandFrom(planned, initial),
     initial,
     last: values.readings

@@ -1,4 +1,4 @@
-import { differenceCiede2000 } from 'culori'
+import { differenceCiede2000 } from 'culori/fn'
 import { assertComputable, assertFinite } from './guard'
 
 export type Lab = { L: number; a: number; b: number }

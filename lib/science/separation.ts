@@ -31,13 +31,14 @@ export function separation({ totalMm, topMm, bottomMm }: LayerHeights): Separati
   })
 }
 
-/** What a ruler's millimetre is in percent of fill height [practice]. */
-export function rulerPercent(totalMm: number): number {
+/** What a ruler tells, a millimetre where nothing else is said, in percent of fill height [practice]. */
+export function rulerPercent(totalMm: number, rulerMm = 1): number {
   assertPositive('totalMm', totalMm)
-  return assertComputable('totalMm', 100 / totalMm)
+  assertPositive('rulerMm', rulerMm)
+  return assertComputable('totalMm', (100 * rulerMm) / totalMm)
 }
 
-/** Percent of fill height under which separation is not told apart from none: 1 %, or 1 mm of the ruler [practice]. */
-export function separationDetectionLimit(totalMm: number): number {
-  return Math.min(100, Math.max(1, rulerPercent(totalMm)))
+/** Percent of fill height under which separation is not told apart from none: 1 %, or what the ruler tells [practice]. */
+export function separationDetectionLimit(totalMm: number, rulerMm = 1): number {
+  return Math.min(100, Math.max(1, rulerPercent(totalMm, rulerMm)))
 }

@@ -27,7 +27,7 @@ export const initialReading = z.object({
   batchId: z.uuid(),
   attribute: attributeKey,
   /** One text per replicate, as typed: "5,60" stays "5,60". Viscosity in mPa·s, or torque % where `isTorque`. */
-  typed: z.array(z.string().trim().min(1, 'Type the reading.').max(60)).min(1).max(5),
+  typed: z.array(z.string().trim().min(1, 'Type the reading.').max(12_000)).min(1).max(5),
   isTorque: z.boolean().default(false),
   detail: entryDetail.omit({ torquePercent: true }).default({}),
   instrumentId: z.uuid().nullable().default(null),

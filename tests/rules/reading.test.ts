@@ -3,7 +3,8 @@ import { claimedInstant } from '@/lib/reading/rules/claimed-time'
 import { askedConditions } from '@/lib/reading/rules/conditions'
 import { conditionDoubts, cycleDoubts } from '@/lib/reading/rules/entry-doubts'
 import { massChangePercent } from '@/lib/science/mass-change'
-import { ImpossibleEntry, valueOf, type TypedEntry, type ValueContext } from '@/lib/reading/rules/value'
+import { ImpossibleEntry, type TypedEntry, type ValueContext } from '@/lib/reading/rules/impossible-entry'
+import { valueOf } from '@/lib/reading/rules/value'
 import { readTyped } from '@/lib/reading/schema/typed'
 
 const context: ValueContext = {

@@ -73,6 +73,7 @@ export async function listInitialMeans(db: Db | Trx, studyIds: string[]) {
     .selectFrom('reading as r')
     .select(['r.studyId', 'r.batchId', 'r.attribute'])
     .select(sql<number[]>`jsonb_agg(r.value order by r.replicate, r.id)`.as('values'))
+    .select(sql<Record<string, unknown>>`jsonb_agg(r.detail order by r.replicate, r.id) -> 0`.as('detail'))
     .where('r.studyId', 'in', studyIds)
     .where('r.studyStationId', 'is', null)
     .where('r.isVoid', '=', false)

@@ -1,4 +1,4 @@
-import type { PlannedAttribute, PlannedCycle } from '@/lib/protocol/schema'
+import { dropletMeasures, type PlannedAttribute, type PlannedCycle } from '@/lib/protocol/schema'
 import { attributeOf } from '@/lib/reading/schema/attributes'
 import type { Band } from '@/lib/science/series'
 import { shownValue } from '@/lib/study/rules/words'
@@ -33,6 +33,13 @@ function limitsText(planned: Named, lower?: number, upper?: number): string {
   if (lower === undefined) return `at most ${shown(upper!)}${end}`
   if (upper === undefined) return `at least ${shown(lower)}${end}`
   return `${shown(lower)} to ${shown(upper)}${end}`
+}
+
+export const dropletMeasureWords: Record<(typeof dropletMeasures)[number], string> = {
+  d50v: 'Median by volume',
+  d32: 'Mean by surface, D[3,2]',
+  d43: 'Mean by volume, D[4,3]',
+  d10: 'Mean by number, D[1,0]',
 }
 
 export function cycleText({ coldC, coldHours, warmC, warmHours, isFrozenThrough }: PlannedCycle): string {

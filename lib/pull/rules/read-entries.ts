@@ -3,8 +3,10 @@ import type { PlannedAttribute } from '@/lib/protocol/schema'
 import { plannedFor } from '@/lib/bench/rules'
 import { attributeName } from '@/lib/reading/schema/attributes'
 import type { Entry } from '@/lib/reading/schema/entry'
-import { ImpossibleEntry, valueOf, type EntryValue } from '@/lib/reading/rules/value'
+import { ImpossibleEntry, type EntryValue } from '@/lib/reading/rules/impossible-entry'
+import { valueOf } from '@/lib/reading/rules/value'
 import type { Frame } from '@/lib/series/queries/frame'
+import { startOf } from '@/lib/series/rules/input'
 import type { PullJar, UsedInstrument } from '../queries/pull-jar'
 
 export type ReadEntry = {
@@ -49,6 +51,7 @@ export function readEntries(jar: PullJar, frame: Frame, entries: readonly Entry[
         jar: { ...jar, fillHeightMm: jar.fillHeightMm ?? jar.plan.fillHeightMm },
         spindles: instrument?.spindles ?? [],
         last: lastValue(frame, jar, entry),
+        ...startOf(frame, jar.batchId, entry.attribute),
       })
       return [{ entry, path, planned: asked, instrument, read: value }]
     } catch (error) {

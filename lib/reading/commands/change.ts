@@ -9,7 +9,8 @@ import { sentenceContext } from '@/lib/series/rules/spoken'
 import { findReading, type ReadingRow } from '../queries/one'
 import { valueDoubts, type EntryDoubt } from '../rules/entry-doubts'
 import { refuseChange } from '../rules/may-change'
-import { ImpossibleEntry, valueOf, type EntryValue } from '../rules/value'
+import { ImpossibleEntry, type EntryValue } from '../rules/impossible-entry'
+import { valueOf } from '../rules/value'
 import type { AttributeKey } from '../schema/attributes'
 import type { Correction, Voiding } from '../schema/change'
 
@@ -93,6 +94,8 @@ function valueInstead(reading: ReadingRow, input: Correction) {
         },
         spindles: reading.spindles ?? [],
         last: reading.value,
+        initial: reading.studyStationId === null ? 'self' : reading.initialDetail,
+        emulsionType: reading.emulsionType,
       },
     )
   } catch (error) {

@@ -48,6 +48,16 @@ export async function findReading(db: Db | Trx, id: string, instrumentId: string
       sql<Record<string, unknown>>`r.detail`.as('detail'),
       sql<{ reason: string; sentence: string }[]>`r.doubts`.as('doubts'),
       sql<string>`app_now()`.as('now'),
+      sql<Record<string, unknown> | null>`(select first.detail from reading first
+        where first.study_id = r.study_id and first.batch_id = r.batch_id and first.attribute = r.attribute
+          and first.study_station_id is null and not first.is_void
+          and not exists (select from reading later where later.supersedes_id = first.id)
+        order by first.replicate, first.id limit 1)`.as('initialDetail'),
+      sql<
+        string | null
+      >`(select coalesce(nullif(b.emulsion_type_found, 'not clear'), f.emulsion_type) from batch b
+        left join formula_version fv on fv.id = b.formula_version_id left join formula f on f.id = fv.formula_id
+        where b.id = r.batch_id)`.as('emulsionType'),
       sql<string>`coalesce((select time_zone from lab limit 1), 'UTC')`.as('zone'),
       sql<{ name: string; constant: number }[] | null>`(select spindles from instrument
         where id = coalesce(${instrumentId}::uuid, r.instrument_id))`.as('spindles'),

@@ -1,34 +1,18 @@
-import type { PlannedAttribute } from '@/lib/protocol/schema'
-import { ScienceError } from '@/lib/science/guard'
 import { massChangePercent } from '@/lib/science/mass-change'
-import { separation } from '@/lib/science/separation'
 import { viscosity, viscosityFactor } from '@/lib/science/viscosity'
-import { attributeOf, type Attribute, type AttributeKey } from '../schema/attributes'
-import type { EntryDetail } from '../schema/entry'
+import { attributeOf, type Attribute } from '../schema/attributes'
 import { readTyped } from '../schema/typed'
-
-/** What must be known of the jar and the protocol to make a value of what was typed. */
-export type ValueContext = {
-  planned: Pick<PlannedAttribute, 'own' | 'viscosity' | 'rulerMm' | 'dropletMeasure' | 'centrifuge'> | null
-  jar: { tareG: number | null; grossG: number | null; fillHeightMm: number | null }
-  /** Of the instrument that was used. */
-  spindles: { name: string; constant: number }[]
-  /** The value before this one, to say what may have slipped. */
-  last: number | null
-}
-
-export type TypedEntry = { attribute: AttributeKey; typed: string; detail: EntryDetail }
-export type EntryValue = { value: number; word: string | null; detail: Record<string, unknown> }
-
-/** Why an entry cannot be so, by the field of the entry that says it: `typed` or `detail.topMm`. */
-export class ImpossibleEntry extends Error {
-  constructor(
-    readonly field: string,
-    readonly sentence: string,
-  ) {
-    super(sentence)
-  }
-}
+import { colourValue } from './colour-value'
+import { dropletsValue } from './droplets-value'
+import {
+  computed,
+  ImpossibleEntry,
+  type EntryValue,
+  type TypedEntry,
+  type ValueContext,
+} from './impossible-entry'
+import { layersValue } from './layers-value'
+import { centrifugeValue, typeValue } from './seen-value'
 
 /** The value of what was typed; throws an ImpossibleEntry where no jar could have given it. */
 export function valueOf(entry: TypedEntry, context: ValueContext): EntryValue {
@@ -50,10 +34,13 @@ export function valueOf(entry: TypedEntry, context: ValueContext): EntryValue {
         ? plain(entry, attribute, context)
         : torqueValue(entry, context)
     case 'type':
+      return typeValue(entry, context)
     case 'colour':
+      return colourValue(entry, context)
     case 'droplets':
+      return dropletsValue(entry, context)
     case 'centrifuge':
-      return plain(entry, attribute, context)
+      return centrifugeValue(entry, attribute, context)
     case 'number':
       return entry.detail.grossG === undefined ? plain(entry, attribute, context) : massValue(entry, context)
   }
@@ -110,49 +97,6 @@ function torqueValue(entry: TypedEntry, { planned, spindles }: ValueContext): En
   }
 }
 
-function layersValue(entry: TypedEntry, { jar }: ValueContext): EntryValue {
-  const { topMm = 0, bottomMm = 0, bleed } = entry.detail
-  const totalMm = entry.detail.totalMm ?? jar.fillHeightMm
-  if (entry.detail.topMm === undefined && entry.detail.bottomMm === undefined && bleed === undefined) {
-    throw new ImpossibleEntry(
-      'detail.topMm',
-      'Give the height of the layer on top and below; 0 where there is none.',
-    )
-  }
-  if (bleed !== undefined && (bleed < 0 || bleed > 4)) {
-    throw new ImpossibleEntry('detail.bleed', 'Bleed is a whole number from 0 to 4.')
-  }
-  if (totalMm === null || totalMm <= 0) {
-    throw new ImpossibleEntry('detail.totalMm', 'Give the height of the fill in mm, above 0.')
-  }
-  for (const [field, height, name] of [
-    ['detail.topMm', topMm, 'The layer on top'],
-    ['detail.bottomMm', bottomMm, 'The layer below'],
-  ] as const) {
-    if (height < 0) throw new ImpossibleEntry(field, `${name} cannot be under 0 mm. Type it again.`)
-    if (height > totalMm) {
-      throw new ImpossibleEntry(
-        field,
-        `${name} cannot be ${height} mm high in a fill of ${totalMm} mm. Measure it again.`,
-      )
-    }
-  }
-  try {
-    const { percent, topPercent, bottomPercent } = separation({ totalMm, topMm, bottomMm })
-    return {
-      value: computed(percent),
-      word: null,
-      detail: { ...entry.detail, topMm, bottomMm, totalMm, topPercent, bottomPercent },
-    }
-  } catch (error) {
-    if (!(error instanceof ScienceError)) throw error
-    throw new ImpossibleEntry(
-      'detail.bottomMm',
-      `Both layers together are higher than the fill of ${totalMm} mm. Measure them again.`,
-    )
-  }
-}
-
 function massValue(entry: TypedEntry, { jar }: ValueContext): EntryValue {
   const grossG = entry.detail.grossG!
   if (jar.tareG === null || jar.grossG === null || jar.grossG <= jar.tareG) {
@@ -199,9 +143,4 @@ function slipSentence(value: number, last: number | null): string {
   return isSlip
     ? `The last was ${last}, so perhaps the point slipped.`
     : `The last was ${last}. Type it again.`
-}
-
-/** What was computed from typed numbers, without the noise of binary fractions: 0.9 of 60 mm is 1.5 %, not 1.4999999999999998. */
-export function computed(value: number): number {
-  return Number(value.toPrecision(12))
 }

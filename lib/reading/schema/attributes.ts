@@ -224,6 +224,11 @@ export function startsAtZero({ key, kind }: Pick<Attribute, 'key' | 'kind'>): bo
   return key === 'mass' || nothingYet.has(kind)
 }
 
+/** Read as a difference from the batch's own initial, which is therefore needed whatever the tolerance. */
+export function toldFromInitial({ attribute }: { attribute: string }): boolean {
+  return attribute === 'colour'
+}
+
 /** Where an attribute of a protocol's own is described: in what is planned of it, or in the whole plan. */
 export type Describing =
   | { own?: OwnAttribute | null | undefined }

@@ -6,7 +6,7 @@ const reason = z.string().trim().min(1, 'A reading is changed only with a reason
 /** A correction is a new reading that supersedes the old one; both stay on record. */
 export const correction = z.object({
   id: z.uuid(),
-  typed: z.string().min(1, 'Type what it should be.').max(200),
+  typed: z.string().min(1, 'Type what it should be.').max(12_000),
   detail: entryDetail.default({}),
   instrumentId: z.uuid().nullish(),
   isConfirmed: z.boolean().default(false),

@@ -4,6 +4,10 @@ import { attributeKey } from './attributes'
 
 const measured = z.number().min(-1e12).max(1e12)
 
+/** What an emulsion-type test tells: which phase a drop of the sample meets the water or the dye with. */
+export const outsidePhases = ['water outside', 'oil outside', 'not clear'] as const
+export type OutsidePhase = (typeof outsidePhases)[number]
+
 /** What belongs to the number: how it was come by. Heights in mm, mass in g, temperature in °C. */
 export const entryDetail = z.strictObject({
   torquePercent: measured.optional(),
@@ -14,6 +18,11 @@ export const entryDetail = z.strictObject({
   totalMm: measured.optional(),
   /** Film, beads or drops without a layer, 0 to 4. */
   bleed: z.number().int().optional(),
+  /** A layer that is seen and too thin for the ruler. */
+  isTopHairline: z.literal(true).optional(),
+  isBottomHairline: z.literal(true).optional(),
+  /** A cream layer of an oil-in-water lotion, apart from oil and water. */
+  creamMm: measured.optional(),
   grossG: measured.optional(),
   word: z.string().max(60).optional(),
   sampleTemperatureC: measured.optional(),
@@ -21,6 +30,11 @@ export const entryDetail = z.strictObject({
   seconds: z.number().positive('Seconds are above 0.').max(86_400).optional(),
   path: z.enum(paths).optional(),
   restMinutes: z.number().min(0).max(100_000).optional(),
+  typeMethod: z.enum(['dilution', 'conductivity', 'dye']).optional(),
+  /** Taken from a photo or judged by eye: shown as an estimate wherever it stands. */
+  isEstimate: z.literal(true).optional(),
+  radiusMm: measured.optional(),
+  minutes: measured.optional(),
 })
 export type EntryDetail = z.infer<typeof entryDetail>
 
@@ -28,16 +42,22 @@ export type EntryDetail = z.infer<typeof entryDetail>
  * One field as it was typed. `typed` is kept letter by letter; with a torque it is the torque's text, for layers
  * and masses any text that says what was read, else it is the value itself.
  */
-export const entry = z.object({
-  id: z.uuid(),
-  attribute: attributeKey,
-  replicate: z.number().int().min(1).max(9).default(1),
-  typed: z.string().min(1, 'Type what was read.').max(200),
-  detail: entryDetail.default({}),
-  instrumentId: z.uuid().nullish(),
-  /** The person was asked whether it is so, and it is. */
-  isConfirmed: z.boolean().default(false),
-})
+export const entry = z
+  .object({
+    id: z.uuid(),
+    attribute: attributeKey,
+    replicate: z.number().int().min(1).max(9).default(1),
+    /** A count of drops is as long as the drops are many. */
+    typed: z.string().min(1, 'Type what was read.').max(12_000),
+    detail: entryDetail.default({}),
+    instrumentId: z.uuid().nullish(),
+    /** The person was asked whether it is so, and it is. */
+    isConfirmed: z.boolean().default(false),
+  })
+  .refine(({ attribute, typed }) => attribute === 'droplets' || typed.length <= 200, {
+    path: ['typed'],
+    message: 'At most 200 signs fit here.',
+  })
 export type Entry = z.output<typeof entry>
 
 /** Two people read one jar: both stay on record, one counts, and the person says why. */

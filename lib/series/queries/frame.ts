@@ -19,6 +19,8 @@ export type FrameBatch = {
   code: string
   madeAt: string | null
   isReference?: boolean
+  /** As its test found it, else as its formula states it. */
+  emulsionType?: string | null
   lines: { percent: number; density: number; internal: boolean }[]
 }
 export type FrameRepeat = { id: string; repeatOf: string; attribute: string; state: string; jarCode: string }
@@ -67,6 +69,8 @@ async function getFrameStudy(db: Db | Trx, studyId: string) {
           join study_station_stay stay on stay.study_station_id = ss.id and stay.until_at is null
           join station st on st.id = stay.station_id where ss.study_id = s.id) as stations,
       (select coalesce(jsonb_agg(jsonb_build_object('id', b.id, 'code', b.code, 'madeAt', b.made_at, 'isReference', sb.is_reference,
+          'emulsionType', coalesce(nullif(b.emulsion_type_found, 'not clear'), (select f.emulsion_type
+            from formula_version fv join formula f on f.id = fv.formula_id where fv.id = b.formula_version_id)),
           'lines', (select coalesce(jsonb_agg(jsonb_build_object('percent', l.percent_thousandths / 1000.0,
               'density', l.density, 'internal', l.is_internal)), '[]')
             from formula_line l where l.formula_version_id = b.formula_version_id)) order by sb.position), '[]')

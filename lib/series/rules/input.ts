@@ -55,7 +55,7 @@ export function seriesUnits(
             repeatabilitySd: s,
             isSeparation: planned.attribute === 'separation',
             ...(planned.attribute === 'separation'
-              ? { detectionLimit: separationDetectionLimit(frame.study.plan.fillHeightMm) }
+              ? { detectionLimit: separationDetectionLimit(frame.study.plan.fillHeightMm, planned.rulerMm) }
               : {}),
             initial,
             initialTime: 0,
@@ -97,6 +97,15 @@ export function initialOf(frame: Frame, batchId: string, attribute: AttributeKey
   const [first] = own
   if (planned?.tolerance.kind !== 'range' || !first) return []
   return own.filter((r) => r.pullJarId === first.pullJarId).map((r) => r.value!)
+}
+
+/** What a difference is told from: how the batch's own initial was come by, and what its emulsion is. */
+export function startOf(frame: Frame, batchId: string, attribute: string) {
+  const initial = frame.readings.find(
+    (r) => r.batchId === batchId && r.attribute === attribute && r.studyStationId === null,
+  )
+  const batch = frame.study.batches.find((one) => one.id === batchId)
+  return { initial: initial?.detail ?? null, emulsionType: batch?.emulsionType ?? null }
 }
 
 function isHighInternalPhase(batch: FrameBatch): boolean {
@@ -142,6 +151,8 @@ function seriesReading(
     values: jar.rows.map((row) => row.value!),
     doubts: [
       ...doubtsOf(jar, flags),
+      // A turned emulsion is out whatever the numbers say [book]: it waits for no repeat.
+      ...(first.attribute === 'type' ? [{ reason: 'out', settled: true }] : []),
       ...(shift ? [{ reason: shift.reason, settled: shift.settles === 'doubt' }] : []),
     ],
     ...(repeated ? { isRepeatOf: repeated.id } : {}),

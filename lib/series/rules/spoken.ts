@@ -35,6 +35,9 @@ export function sentenceContext(
 /** What a rule found in this study's words. A step between words is no distance, so it is not told as one. */
 export function ruleSentence(rule: RuleFinding, context: SentenceContext, attribute: Attribute): string {
   const { mean, repeat } = rule.evidence
+  if (attribute.key === 'type' && rule.rule === 'out') {
+    return `The emulsion at ${context.station} has turned over, ${context.when(rule.at)}. An extrapolation across a change of type is void.`
+  }
   const isSingle = rule.rule === 'out' && rule.level === 'doubt' && typeof repeat !== 'number'
   if (!attribute.words || !isSingle || typeof mean !== 'number') return sentenceOf(rule, context)
   return `${attribute.label} at ${context.station} is "${context.value(mean)}", beyond the band. Look at a second jar before anyone worries.`

@@ -34,7 +34,10 @@ export async function getSheet(db: Db, actor: Actor, code: string) {
     study: headOf(study),
     batches,
     finding: findingOf({ study, stations, batches, pullJars, series, flags }),
-    detectionPercent: separationDetectionLimit(fillHeightMm),
+    detectionPercent: separationDetectionLimit(
+      fillHeightMm,
+      study.plan.attributes.find((one) => one.attribute === 'separation')?.rulerMm,
+    ),
     todayWeeks: study.state === 'running' ? weeksBetween(study.startedOn, study.today) : null,
     flags,
     shelves: batches.map((batch) => ({

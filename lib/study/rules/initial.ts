@@ -1,7 +1,13 @@
 import { refuse } from '@/lib/http/errors'
 import type { PlannedAttribute } from '@/lib/protocol/schema'
-import { attributeOf, attributeName } from '@/lib/reading/schema/attributes'
-import { computed } from '@/lib/reading/rules/value'
+import {
+  attributeOf,
+  attributeName,
+  type AttributeKind,
+  toldFromInitial,
+} from '@/lib/reading/schema/attributes'
+import { computed, ImpossibleEntry } from '@/lib/reading/rules/impossible-entry'
+import { valueOf as readingValue } from '@/lib/reading/rules/value'
 import { readTyped } from '@/lib/reading/schema/typed'
 import { isBeyondBand, toleranceBand } from '@/lib/science/band'
 import { mean } from '@/lib/science/mean'
@@ -57,12 +63,12 @@ function refuseMissing(
   batch: { id: string; code: string },
   given: InitialReading[],
 ) {
-  if (attribute.tolerance.kind === 'range') return
+  if (attribute.tolerance.kind === 'range' && !toldFromInitial(attribute)) return
   const label = attributeName(attribute.attribute)
   const readings = given.filter((one) => one.batchId === batch.id && one.attribute === attribute.attribute)
   if (readings.length === 0) {
     throw refuse.invalid(
-      `${batch.code} has no initial ${inSentence(attribute.attribute)}, and its band is told from the initial. Measure it before the study starts.`,
+      `${batch.code} has no initial ${inSentence(attribute.attribute)}, and its ${toldFromInitial(attribute) ? 'change' : 'band'} is told from the initial. Measure it before the study starts.`,
       { initialReadings: `${label} of ${batch.code} is missing.` },
     )
   }
@@ -85,6 +91,7 @@ function rowOf(
 ): InitialRow {
   const attribute = attributeOf(planned.attribute, planned)
   const path = `initialReadings.${index}.typed.${place}`
+  if (readBySign.has(attribute.kind)) return ofItself(planned, reading, text, place, path)
   const wordAt = attribute.words?.indexOf(text.toLowerCase()) ?? -1
   const typed = wordAt === -1 ? readTyped(text) : wordAt
   if (typed === null) {
@@ -112,6 +119,43 @@ function rowOf(
     detail: { method: planned.method, ...detail },
     instrumentId: reading.instrumentId,
     measuredAt: reading.measuredAt,
+  }
+}
+
+/** Kinds whose text is no single number; where their differences are told from, the initial is 0. */
+const readBySign: ReadonlySet<AttributeKind> = new Set(['type', 'colour', 'droplets', 'centrifuge'])
+
+function ofItself(
+  planned: PlannedAttribute,
+  { batchId, detail, instrumentId, measuredAt }: InitialReading,
+  text: string,
+  place: number,
+  path: string,
+): InitialRow {
+  try {
+    const read = readingValue(
+      { attribute: planned.attribute, typed: text, detail },
+      {
+        ...{ planned, spindles: [], last: null, initial: 'self' },
+        jar: { tareG: null, grossG: null, fillHeightMm: null },
+      },
+    )
+    return {
+      ...{
+        batchId,
+        attribute: planned.attribute,
+        replicate: place + 1,
+        typed: text,
+        instrumentId,
+        measuredAt,
+      },
+      ...{ value: read.value, word: read.word, detail: { method: planned.method, ...read.detail } },
+    }
+  } catch (error) {
+    if (!(error instanceof ImpossibleEntry)) throw error
+    throw refuse.invalid(`The initial ${inSentence(planned.attribute)}: ${error.sentence}`, {
+      [path]: error.sentence,
+    })
   }
 }
 

@@ -1,0 +1,41 @@
+import type { PanelProps } from '@/components/bench/kind-panel'
+import { PanelHead } from '@/components/bench/panel-head'
+import { FieldBand } from '@/components/bench/value-panel'
+import { TextArea } from '@/components/ui/text-area'
+import { dropCount, dropsOf, readDrops } from '@/lib/batch/rules/droplets'
+import { dropletMeasureWords } from '@/lib/protocol/rules/words'
+
+/** Diameters typed or pasted, one for each drop or with how many there were, and what they come to. */
+export function DropletsPanel({ slot, text, verdict, type }: PanelProps) {
+  const counted = text.trim() === '' ? null : readDrops(text)
+  const drops = counted === null || typeof counted === 'string' ? null : dropsOf(counted)
+  const measure = slot.field.planned.dropletMeasure ?? 'd50v'
+  return (
+    <div className="grid gap-4">
+      <PanelHead slot={slot} />
+      <TextArea
+        label="Diameters, micrometres"
+        density="bench"
+        rows={4}
+        value={text}
+        onText={(typed) => type(slot.key, typed)}
+        hint="One for each drop, or with how many there were: 2.5 × 12; 3.5 × 30; 4.1"
+        error={verdict.state === 'impossible' ? verdict.sentence : undefined}
+      />
+      <p aria-live="polite" className="min-h-9">
+        {verdict.state === 'value' ? (
+          <span className={`text-30 font-650 ${verdict.isOut ? 'text-alarm' : ''}`}>
+            {verdict.value.toFixed(2)} micrometres
+          </span>
+        ) : null}
+        {drops ? (
+          <span className="block text-17">
+            {dropletMeasureWords[measure]} of {dropCount(drops)} drops. D[3,2] {drops.d32.toFixed(2)}, D[4,3]{' '}
+            {drops.d43.toFixed(2)}, span {drops.span.toFixed(2)}.
+          </span>
+        ) : null}
+      </p>
+      <FieldBand field={slot.field} now={verdict.state === 'value' ? verdict.value : null} width={440} />
+    </div>
+  )
+}
