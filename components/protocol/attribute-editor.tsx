@@ -3,10 +3,13 @@
 import { Button } from '@/components/ui/button'
 import { Field } from '@/components/ui/field'
 import { Select } from '@/components/ui/select'
-import type { PlannedAttribute, Tolerance } from '@/lib/protocol/schema'
-import { attributes as known, type AttributeKey, attributeName } from '@/lib/reading/schema/attributes'
+import { freshAttribute } from '@/lib/protocol/rules/fresh-attribute'
+import type { PlannedAttribute } from '@/lib/protocol/schema'
+import { attributes as known, type KnownKey, attributeName } from '@/lib/reading/schema/attributes'
+import { AttributeConditions } from './attribute-conditions'
 import { BandPreview } from './band-preview'
 import { NumberPart } from './number-part'
+import { AddOwn, OwnDefinition } from './own-attribute'
 import { ToleranceFields } from './tolerance-fields'
 
 type Props = {
@@ -32,10 +35,12 @@ export function AttributeEditor({ attributes, onChange, fields }: Props) {
             <li key={planned.attribute} className="py-3" role="group" aria-label={label}>
               <div className="flex flex-wrap items-end gap-3">
                 <b className="w-[120px] pb-1.5 font-650">{label}</b>
-                <ToleranceFields
-                  tolerance={planned.tolerance}
-                  onChange={(tolerance) => change(index, { tolerance })}
-                />
+                {planned.own?.kind === 'scale' ? null : (
+                  <ToleranceFields
+                    tolerance={planned.tolerance}
+                    onChange={(tolerance) => change(index, { tolerance })}
+                  />
+                )}
                 <NumberPart
                   label="Replicates"
                   value={planned.replicates}
@@ -56,30 +61,14 @@ export function AttributeEditor({ attributes, onChange, fields }: Props) {
                   Take out
                 </Button>
               </div>
-              {planned.attribute === 'viscosity' ? (
-                <div className="mt-3 flex flex-wrap items-end gap-3 sm:ml-[132px]">
-                  <Field
-                    label="Spindle"
-                    value={planned.viscosity?.spindle ?? ''}
-                    onText={(spindle) => change(index, { viscosity: { ...viscosityOf(planned), spindle } })}
-                    wrap="w-[160px]"
-                  />
-                  <NumberPart
-                    label="Spindle constant"
-                    value={viscosityOf(planned).spindleConstant}
-                    onNumber={(spindleConstant) =>
-                      change(index, { viscosity: { ...viscosityOf(planned), spindleConstant } })
-                    }
-                    wrap="w-[150px]"
-                  />
-                  <NumberPart
-                    label="rpm"
-                    value={viscosityOf(planned).rpm}
-                    onNumber={(rpm) => change(index, { viscosity: { ...viscosityOf(planned), rpm } })}
-                    wrap="w-[90px]"
-                  />
-                </div>
+              {planned.own ? (
+                <OwnDefinition
+                  own={planned.own}
+                  tolerance={planned.tolerance}
+                  onChange={(more) => change(index, more)}
+                />
               ) : null}
+              <AttributeConditions planned={planned} onChange={(more) => change(index, more)} />
               <BandPreview planned={planned} />
               {error ? (
                 <p role="alert" className="mt-1 text-13 text-alarm">
@@ -98,17 +87,15 @@ export function AttributeEditor({ attributes, onChange, fields }: Props) {
           value=""
           options={left.map((one) => ({ value: one.key, label: one.label }))}
           onPick={(key) => {
-            if (key) onChange([...attributes, { ...fresh, attribute: key as AttributeKey }])
+            if (key) onChange([...attributes, freshAttribute(key as KnownKey)])
           }}
           wrap="mt-3 w-[240px]"
         />
       ) : null}
+      <AddOwn
+        taken={attributes.map(({ attribute }) => attribute)}
+        onAdd={(planned) => onChange([...attributes, planned])}
+      />
     </>
   )
-}
-
-const fresh = { tolerance: { kind: 'range', upper: 1 } as Tolerance, replicates: 1, method: '' }
-
-function viscosityOf({ viscosity }: PlannedAttribute) {
-  return viscosity ?? { spindle: '', spindleConstant: 10_000, rpm: 10 }
 }

@@ -4,6 +4,7 @@ import type { ReactNode } from 'react'
 import { FigureDetails } from '@/components/ui/figure-details'
 import { Section } from '@/components/ui/section'
 import { dayText } from '@/lib/report/rules'
+import { capital } from '@/lib/study/rules/words'
 import type { CaseDetail } from '@/lib/shelf-case/queries/read'
 import type { Computed } from '@/lib/shelf-case/rules/build'
 import { capFacts, frozenText, hashFacts, monthsFacts, recordFacts } from './case-facts'
@@ -77,6 +78,10 @@ export function RestsOn({ content, whyFewer, months, kind, detail }: Props) {
           ],
         ] as [string, ReactNode][])
       : []),
+    ...(content.outside ?? []).map((x): [string, ReactNode] => [
+      capital(x.what),
+      `${x.test}: ${x.outcome}${x.value ? `, ${x.value}` : ''}. ${x.labName}, report ${x.reportNumber} of ${dayText(x.reportedOn)}${x.batch ? `, ${x.batch}` : ''}`,
+    ]),
     [
       'Supported',
       <FigureDetails

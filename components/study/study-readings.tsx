@@ -14,6 +14,7 @@ import type { ReadingChain, ReadingEntry, StudyReadings as Page } from '@/lib/st
 import { dayIn, spokenDay } from '@/lib/study/rules/calendar'
 import { jarName, readingList } from '@/lib/study/rules/reading-list'
 import { shownWithUnit } from '@/lib/study/rules/words'
+import { OutsideResults } from './outside-results'
 import { ReadingActs } from './reading-acts'
 import { StudyHeading, type StudyRights } from './study-heading'
 
@@ -106,6 +107,7 @@ export function StudyReadings({ page, query, rights, timeZone, personId, mayLog 
         </div>
       )}
       <ListPages list={readingList} path={path} query={query} page={page} />
+      <OutsideResults code={study.code} batches={page.batches.map(({ code }) => code)} mayLog={mayLog} />
     </>
   )
 }

@@ -443,6 +443,29 @@ export interface Lab {
   workingDays: Generated<number[]>
 }
 
+export interface OutsideResult {
+  batchId: string | null
+  bytes: number
+  id: string
+  labName: string
+  note: Generated<string>
+  originalName: Generated<string>
+  outcome: string
+  reason: string | null
+  recordedAt: Generated<string>
+  recordedBy: string
+  reportedOn: string
+  reportNumber: string
+  sha256: string
+  studyId: string
+  supersedesId: string | null
+  test: string
+  timeWeeks: Numeric | null
+  type: string
+  value: Generated<string>
+  what: string
+}
+
 export interface Password {
   changedAt: Generated<string>
   hash: string
@@ -826,6 +849,7 @@ export interface DB {
   jarMishap: JarMishap
   jarMove: JarMove
   lab: Lab
+  outsideResult: OutsideResult
   password: Password
   person: Person
   photo: Photo

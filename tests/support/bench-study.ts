@@ -67,6 +67,7 @@ export async function benchStudy(
   formulator: Actor,
   weeksAgo: number,
   plan = planOfTest,
+  initials: { attribute: string; typed: string[] }[] = [],
 ): Promise<BenchStudy> {
   const startedAt = new Date(Date.now() - weeksAgo * 604_800_000 - 3_600_000).toISOString()
   return transact(db, formulator, {}, async (trx) => {
@@ -96,6 +97,7 @@ export async function benchStudy(
             attribute: 'viscosity',
             typed: ['6500'],
           },
+          ...initials.map((one) => ({ batchId, ...one })),
         ],
       }),
     )

@@ -1,7 +1,7 @@
 import type { PlannedAttribute, PlannedStation, ProtocolPlan } from '@/lib/protocol/schema'
 import { attributeName } from '@/lib/reading/schema/attributes'
 import { askedAt, stationName } from './plan'
-import { cycleText, toleranceText } from './words'
+import { cycleText, dropletMeasureWords, toleranceText } from './words'
 
 /** What differs between two plans, one sentence a difference, in the order of the plan's own page. */
 export function planChanges(before: ProtocolPlan, after: ProtocolPlan): string[] {
@@ -74,6 +74,7 @@ function attributeChanges(before: ProtocolPlan, after: ProtocolPlan): string[] {
       ...turned(`${label}: replicates`, was.replicates, planned.replicates),
       ...turned(`${label}: method`, was.method, planned.method),
       ...turned(`${label}: spindle`, spindleText(was), spindleText(planned)),
+      ...turned(`${label}: conditions`, conditionsText(was), conditionsText(planned)),
     ]
   })
   return [...gone, ...changed]
@@ -131,4 +132,25 @@ function weeksText(weeks: number[]): string {
 
 function spindleText({ viscosity }: PlannedAttribute): string | undefined {
   return viscosity && `${viscosity.spindle}, ${viscosity.rpm} rpm, constant ${viscosity.spindleConstant}`
+}
+
+/** What belongs to one attribute alone, in the order in which the editor asks it. */
+function conditionsText({
+  own,
+  rulerMm,
+  dropletMeasure,
+  centrifuge,
+  isInitialOnly,
+}: PlannedAttribute): string {
+  return [
+    own?.kind === 'scale' ? own.words.join(', ') : '',
+    own?.kind === 'number' ? `${own.lower} to ${own.upper} ${own.unit}, ${own.decimals} decimals`.trim() : '',
+    own ? `${own.jar} jar` : '',
+    rulerMm === undefined ? '' : `the ruler tells ${rulerMm} mm`,
+    dropletMeasure ? dropletMeasureWords[dropletMeasure] : '',
+    centrifuge ? `${centrifuge.rpm} rpm at ${centrifuge.radiusMm} mm for ${centrifuge.minutes} minutes` : '',
+    isInitialOnly ? 'only once, before the start' : '',
+  ]
+    .filter(Boolean)
+    .join('; ')
 }

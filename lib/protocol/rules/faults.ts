@@ -1,4 +1,4 @@
-import type { PlannedStation, ProtocolPlan } from '@/lib/protocol/schema'
+import type { PlannedAttribute, PlannedStation, ProtocolPlan } from '@/lib/protocol/schema'
 import { attributeName } from '@/lib/reading/schema/attributes'
 import { askedAt, stationName, variantOf } from './plan'
 
@@ -20,6 +20,9 @@ export function planFaults(plan: ProtocolPlan): PlanFault[] {
       'The protocol measures nothing yet. Add at least one attribute to its plan.',
     )
   }
+  plan.attributes.forEach((planned, index) => {
+    add('saving', `plan.attributes.${index}.tolerance`, ownLimits(planned))
+  })
   plan.stations.forEach((station, index) => {
     const name = stationName(station, index)
     const path = `plan.stations.${index}`
@@ -70,6 +73,23 @@ function withoutPartner(plan: ProtocolPlan, station: PlannedStation, name: strin
   return isBeside
     ? null
     : `${name} has no jars in light beside it to compare with. Add the same station in light.`
+}
+
+/** A limit of an own attribute lies among what it can be. */
+function ownLimits({ attribute, own, tolerance }: PlannedAttribute): string | null {
+  if (!own) return null
+  const name = attributeName(attribute)
+  if (own.kind === 'scale') {
+    if (tolerance.kind === 'range' && tolerance.upper !== undefined && own.words[tolerance.upper]) return null
+    return `${name} is a scale: choose the worst word that is allowed.`
+  }
+  if (tolerance.kind !== 'range') return null
+  const beyond = [tolerance.lower, tolerance.upper].find(
+    (limit) => limit !== undefined && (limit < own.lower || limit > own.upper),
+  )
+  return beyond === undefined
+    ? null
+    : `${name} can be ${own.lower} to ${own.upper}, so a limit of ${beyond} says nothing. Change one of them.`
 }
 
 function packless(plan: ProtocolPlan, { isOwnPack }: PlannedStation, name: string): string | null {

@@ -35,6 +35,7 @@ export function EvidencePages({ content }: { content: CaseContent }) {
         <Text style={style.h2}>Temperature of {content.station.name}</Text>
         <Text>{temperatureText(content)}</Text>
       </View>
+      <OutsideResults content={content} />
       <Text style={style.h2}>What weakens it</Text>
       {content.weakens.length === 0 ? <Text>Nothing was noted.</Text> : null}
       {content.weakens.map((w, i) => (
@@ -48,6 +49,33 @@ export function EvidencePages({ content }: { content: CaseContent }) {
         </View>
       ))}
     </>
+  )
+}
+
+/** Supporting evidence: nothing is computed from it. */
+function OutsideResults({ content: { outside = [] } }: { content: CaseContent }) {
+  if (outside.length === 0) return null
+  return (
+    <View>
+      <Text style={style.h2}>Outside laboratories</Text>
+      {outside.map((x) => (
+        <View key={`${x.sha256} ${x.test} ${x.batch}`} style={style.row} wrap={false}>
+          <Text style={{ width: 62, color: '#333' }}>{x.outcome}</Text>
+          <View style={{ flex: 1 }}>
+            <Text style={style.bold}>
+              {x.test}
+              {x.value ? `: ${x.value}` : ''}
+            </Text>
+            <Text>
+              {x.labName}, report {x.reportNumber} of {dayText(x.reportedOn)}
+              {x.batch ? `, batch ${x.batch}` : ''}
+              {x.weeks === null ? '' : `, week ${x.weeks}`}. Entered by {x.by}.
+            </Text>
+            <Text style={style.soft}>document {x.sha256}</Text>
+          </View>
+        </View>
+      ))}
+    </View>
   )
 }
 

@@ -3,13 +3,14 @@ import type { Db, Trx } from '@/lib/db/client'
 import type { Actor } from '@/lib/auth/actor'
 import { refuse } from '@/lib/http/errors'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
+import { outsideResultsOf } from '@/lib/outside/queries'
 import { loadFrame } from '@/lib/series/queries/frame'
 import { assessStudy } from '@/lib/series/rules/assess'
 
 export type Evidence = Awaited<ReturnType<typeof loadEvidence>>
 
 /**
- * Everything a case is computed from, in twelve statements whatever the size of the study. The series are judged anew
+ * Everything a case is computed from, in thirteen statements whatever the size of the study. The series are judged anew
  * from the readings, so that what a case freezes is what its inputs give.
  */
 export async function loadEvidence(db: Db | Trx, actor: Actor, studyId: string) {
@@ -114,6 +115,7 @@ export async function loadEvidence(db: Db | Trx, actor: Actor, studyId: string) 
     .where('f.batchId', 'in', ids)
     .orderBy('f.number')
     .execute()
+  const outside = await outsideResultsOf(db, studyId)
   const missed = await db
     .selectFrom('pullJar as pj')
     .innerJoin('pull', 'pull.id', 'pj.pullId')
@@ -150,6 +152,7 @@ export async function loadEvidence(db: Db | Trx, actor: Actor, studyId: string) 
     readings: readings.map((r) => ({ ...r, detail: r.detail as Record<string, unknown> })),
     flags,
     missed,
+    outside,
     amendments,
     moves,
   }

@@ -117,10 +117,24 @@ export function computeCase(
       attributes,
       record,
       missing,
+      ...outsideOf(evidence),
       dataMonths,
     }),
     missing,
+    ...outsideOf(evidence),
     readings: readingTable(evidence, superseded, weeksOf),
+  }
+}
+
+function outsideOf({ outside }: Evidence): Pick<CaseContent, 'outside'> {
+  const standing = outside.filter((one) => !one.isSuperseded)
+  if (standing.length === 0) return {}
+  return {
+    outside: standing.map((one) => ({
+      ...{ what: one.what, test: one.test, batch: one.batch, weeks: one.timeWeeks, outcome: one.outcome },
+      ...{ value: one.value, labName: one.labName, reportNumber: one.reportNumber },
+      ...{ reportedOn: one.reportedOn, by: one.initials, sha256: one.sha256 },
+    })),
   }
 }
 

@@ -61,6 +61,8 @@ export type CaseContent = {
   weakens: Weakness[]
   missing: { jar: string; station: string; label: string; reason: string }[]
   readings: ReadingEvidence[]
+  /** What outside laboratories reported; left out where there is none. */
+  outside?: OutsideEvidence[]
   putForward: { by: string; initials: string; at: string }
   /** Put forward by an invented person of the demo: the report says so on every page. */
   isInvented: boolean
@@ -90,6 +92,22 @@ export type AttributeEvidence = {
   reading: { batch: string; months: number }[]
   /** How each batch stands at the station of the case: band, worst reading and last time passed. Since format 2. */
   series?: { batch: string; calc: DriftCalculation | null }[]
+}
+
+/** It supports and computes nothing: microbiology and preservation belong to qualified laboratories. */
+export type OutsideEvidence = {
+  what: string
+  test: string
+  batch: string | null
+  weeks: number | null
+  outcome: string
+  value: string
+  labName: string
+  reportNumber: string
+  reportedOn: string
+  by: string
+  /** Of the document. */
+  sha256: string
 }
 
 export type ShelfEvidence = {

@@ -19,6 +19,7 @@ export function weaknesses(from: {
   attributes: AttributeEvidence[]
   record: TemperatureRecord | null
   missing: CaseContent['missing']
+  outside?: CaseContent['outside']
   dataMonths: number
 }): Weakness[] {
   const stands: Weakness[] = []
@@ -60,6 +61,13 @@ export function weaknesses(from: {
       state: 'stands',
       title: `${capital(from.station.name)} left its limits`,
       text: `${Math.round(x.hours)} h from ${dayText(x.from)}, ${x.worstC.toFixed(1)} °C at the worst. Mean kinetic temperature does not excuse it.`,
+      by: null,
+    })
+  for (const x of (from.outside ?? []).filter((one) => one.outcome !== 'pass'))
+    stands.push({
+      state: 'stands',
+      title: `${capital(x.what)} ${x.outcome === 'fail' ? 'failed' : 'was not judged'} at ${x.labName}`,
+      text: `${x.test}, report ${x.reportNumber} of ${dayText(x.reportedOn)}${x.value ? `: ${x.value}` : ''}. What it means for the product is the safety assessor's to say.`,
       by: null,
     })
   for (const f of from.flags.filter((f) => f.state === 'open'))
