@@ -1,5 +1,7 @@
 /** @type {import('next').NextConfig} */
 const config = {
+  // Names the build, so that each has a service worker of its own. Inherited by the build's own processes.
+  env: { STILLSTAND_BUILD: (process.env.STILLSTAND_BUILD ??= String(Date.now())) },
   reactStrictMode: true,
   poweredByHeader: false,
   devIndicators: false,

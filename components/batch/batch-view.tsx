@@ -10,7 +10,6 @@ import type { BatchPage } from '@/lib/batch/queries/get-batch'
 import { batchKey } from '@/lib/batch/schema'
 import { grouped } from '@/lib/number/rules'
 import { fetcher } from '@/lib/http/fetcher'
-import { BatchTray } from './batch-tray'
 import { claimOf, PaperSwitch } from './paper-switch'
 import { ReferenceView } from './reference-view'
 import { RestPart } from './rest-part'
@@ -77,7 +76,6 @@ export function BatchView({ code, part, personId, mayWrite, mayStart }: Props) {
           </div>
         }
       />
-      <BatchTray outbox={outbox} />
       <div className="mt-4">
         {shown === 'weighing' ? <WeighPart work={work} /> : null}
         {shown === 'process' ? <StepPart work={work} /> : null}

@@ -1,7 +1,6 @@
 import Link from 'next/link'
 import { Heading } from '@/components/ui/heading'
 import { grouped } from '@/lib/number/rules'
-import { BatchTray } from './batch-tray'
 import { ReadingsPart } from './readings-part'
 import type { BatchWork } from './work'
 
@@ -24,7 +23,6 @@ export function ReferenceView({ work }: { work: BatchWork }) {
         }
         sentence="Bought in to stand beside studies. Its formula is not known here; no headline, pooling or shelf life counts it."
       />
-      <BatchTray outbox={work.outbox} />
       {batch.note ? <p className="mt-4 max-w-[720px]">{batch.note}</p> : null}
       <div className="mt-6">
         <ReadingsPart work={work} moment="initial" />

@@ -1,7 +1,7 @@
 'use client'
 
 import { useState } from 'react'
-import type { BenchPerson } from '@/components/bench/bench-app'
+import type { BenchPerson } from '@/components/device/last-person'
 import type { DraftEntry } from '@/components/bench/draft'
 import { Button } from '@/components/ui/button'
 import { Dialog } from '@/components/ui/dialog'
@@ -160,7 +160,7 @@ export function TwoPeople({ jar, person, theirs, mine, isBusy, onDecide, onClose
 
 type SideProps = { name: string; lines: string[]; isPicked: boolean; onPick: () => void }
 
-function Side({ name, lines, isPicked, onPick }: SideProps) {
+export function Side({ name, lines, isPicked, onPick }: SideProps) {
   return (
     <button
       type="button"

@@ -1,4 +1,4 @@
-import { Tray } from '@/components/bench/tray'
+import { Tray } from '@/components/device/tray'
 import type { OutboxOnScreen } from '@/components/device/use-outbox'
 import { LightSwitch } from '@/components/bench/light-switch'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'

@@ -1,5 +1,5 @@
 import { AskAgain, TwoPeople } from '@/components/bench/answers'
-import type { BenchPerson } from '@/components/bench/bench-app'
+import type { BenchPerson } from '@/components/device/last-person'
 import type { JarEntry } from '@/components/bench/use-jar-entry'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 

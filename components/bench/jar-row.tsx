@@ -1,4 +1,4 @@
-import { TinyJar } from '@/components/bench/tray'
+import { TinyJar } from '@/components/bench/tiny-jar'
 import type { BenchJar } from '@/lib/bench/queries/bench-jar'
 import { shortDay } from '@/lib/report/rules'
 

@@ -1,7 +1,7 @@
 'use client'
 
 import useSWR from 'swr'
-import type { BenchPerson } from '@/components/bench/bench-app'
+import type { BenchPerson } from '@/components/device/last-person'
 import { OpenJar } from '@/components/bench/open-jar'
 import type { OutboxOnScreen } from '@/components/device/use-outbox'
 import { Button } from '@/components/ui/button'

@@ -1,4 +1,4 @@
-import { TinyJar } from '@/components/bench/tray'
+import { TinyJar } from '@/components/bench/tiny-jar'
 import { heatLine, heatWeight } from '@/components/marks/heat'
 import type { Bench } from '@/lib/bench/queries/today'
 

@@ -2,10 +2,12 @@
 
 import { useEffect } from 'react'
 import { useDevice } from './device-context'
+import { rememberLastPerson } from './last-person'
 
 /** Stands once on every page of the notebook: what waits goes out by itself, wherever its author is. */
-export function DeviceKeeper() {
+export function DeviceKeeper({ person }: { person: { personId: string; initials: string } }) {
   const device = useDevice()
+  const { personId, initials } = person
 
   useEffect(() => {
     if (!device) return
@@ -16,13 +18,26 @@ export function DeviceKeeper() {
     window.addEventListener('online', up)
     window.addEventListener('offline', down)
     document.addEventListener('visibilitychange', shown)
+    navigator.serviceWorker?.addEventListener('message', up)
     if (!navigator.onLine) down()
     return () => {
       window.removeEventListener('online', up)
       window.removeEventListener('offline', down)
       document.removeEventListener('visibilitychange', shown)
+      navigator.serviceWorker?.removeEventListener('message', up)
     }
   }, [device])
+
+  useEffect(() => {
+    rememberLastPerson({ personId, initials })
+    // The browser may ask its user, or say no; then it throws things away only when it runs out of room.
+    void navigator.storage?.persist?.().catch(() => undefined)
+    // A build has a worker of its own, which brings its own shell; in development files change under their names.
+    if (process.env.NODE_ENV === 'production')
+      void navigator.serviceWorker
+        ?.register(`/sw.js?build=${process.env['STILLSTAND_BUILD']}`)
+        .catch(() => undefined)
+  }, [personId, initials])
 
   return null
 }

@@ -1,4 +1,5 @@
 import { isSignedOut, keep } from '@/components/session/keep'
+import { newId } from '@/lib/db/id'
 import { ClientError, isPassing } from '@/lib/http/fetcher'
 import type { Drafts } from './drafts'
 import {
@@ -25,9 +26,11 @@ export type OutboxState = {
   sending: Readonly<Record<string, number>>
   /** Ids of entries that somebody stands and waits for; they are told there, not among what waits. */
   awaited: readonly string[]
+  /** When the server last told what the page shows. */
+  asOf: string | null
 }
 export const emptyOutbox: OutboxState = {
-  ...{ items: [], isOnline: true, isSignedOut: false, sending: {}, awaited: [] },
+  ...{ items: [], isOnline: true, isSignedOut: false, sending: {}, awaited: [], asOf: null },
 }
 
 export type Outbox = ReturnType<typeof makeOutbox>
@@ -106,6 +109,7 @@ export function makeOutbox(personId: string, store: Store, drafts: Drafts, tabs:
     clearTimeout(timer)
     if (!lanes.some((lane) => !running.has(lane) && nextToSend(state.items, lane))) return
     if (failures === 0) return void flush()
+    askForWaking(personId)
     timer = setTimeout(() => void flush(), pausesMs[Math.min(failures, pausesMs.length) - 1])
   }
 
@@ -134,7 +138,7 @@ export function makeOutbox(personId: string, store: Store, drafts: Drafts, tabs:
         return false
       }
       set({ isOnline: true })
-      await refused(item, thrown)
+      if (waiting.isAwaited(item.id) || !(await isRebased(item, thrown))) await refused(item, thrown)
       return true
     } finally {
       showProgress(item.id, null)
@@ -172,6 +176,15 @@ export function makeOutbox(personId: string, store: Store, drafts: Drafts, tabs:
     tabs.tell('sent', JSON.stringify({ item: { ...item, file: null }, answer }))
   }
 
+  /** Others only had the jar open meanwhile: nothing stands against it, so it goes out at the jar as it is now. */
+  async function isRebased(item: OutboxItem, error: ClientError): Promise<boolean> {
+    const { state: now, version } = (error.detail ?? {}) as { state?: string; version?: number }
+    if (error.code !== 'stale' || now !== 'due' || !version || version === item.body['version']) return false
+    await store.changeItem({ ...item, key: newId(), body: { ...item.body, version } })
+    await changed()
+    return true
+  }
+
   /** Beside the form where its author waits for it, else kept until a person decides; a file is kept in any case. */
   async function refused(item: OutboxItem, error: ClientError): Promise<void> {
     if (waiting.isAwaited(item.id) && !item.file) {
@@ -206,11 +219,19 @@ export function makeOutbox(personId: string, store: Store, drafts: Drafts, tabs:
 
     /** What another request found out. */
     noteReached(isReached: boolean): void {
-      if (isReached !== state.isOnline) set({ isOnline: isReached })
+      if (isReached !== state.isOnline || (isReached && state.isSignedOut))
+        set({ isOnline: isReached, isSignedOut: state.isSignedOut && !isReached })
       if (isReached && failures > 0) {
         failures = 0
         plan()
       }
+    },
+
+    noteRead: (at: string) => set({ asOf: at }),
+
+    noteRefused(error: ClientError): void {
+      if (isSignedOut(error) && !state.isSignedOut) set({ isSignedOut: true })
+      if (error.status === 0) set({ isOnline: false })
     },
 
     /**
@@ -240,7 +261,7 @@ export function makeOutbox(personId: string, store: Store, drafts: Drafts, tabs:
 
     /** Sent once more after it was refused, as it is or changed. */
     async sendAgain(item: OutboxItem, change: Partial<Pick<OutboxItem, 'body' | 'url'>> = {}): Promise<void> {
-      await store.changeItem({ ...item, ...change, key: newItem(item).id, refusal: null })
+      await store.changeItem({ ...item, ...change, key: newId(), refusal: null })
       await changed()
       void run(laneOf(item))
     },
@@ -251,4 +272,12 @@ export function makeOutbox(personId: string, store: Store, drafts: Drafts, tabs:
       await changed()
     },
   }
+}
+
+/** Where the browser can, it wakes the service worker when the network is back, also with no page open. */
+function askForWaking(personId: string): void {
+  type WithSync = ServiceWorkerRegistration & { sync?: { register: (tag: string) => Promise<void> } }
+  void navigator.serviceWorker?.ready
+    .then((registration) => (registration as WithSync).sync?.register(`outbox.${personId}`))
+    .catch(() => undefined)
 }

@@ -5,6 +5,7 @@ import { usePathname } from 'next/navigation'
 import type { ReactNode } from 'react'
 import { DeviceOf } from '@/components/device/device-context'
 import { DeviceKeeper } from '@/components/device/device-keeper'
+import { ShellTray } from '@/components/device/tray'
 import { Logo } from '@/components/marks/logo'
 import { SignedOutDialog } from '@/components/session/signed-out-dialog'
 import { Finder } from './finder'
@@ -23,7 +24,7 @@ export function Shell(props: Props) {
   const isBench = path === '/bench' || path.startsWith('/bench/')
   return (
     <DeviceOf personId={props.who.personId}>
-      <DeviceKeeper />
+      <DeviceKeeper person={props.who} />
       {isBench ? <BenchShell {...props} isWhole={path !== '/bench'} /> : <DeskShell {...props} path={path} />}
       <SignedOutDialog who={props.who} density={isBench ? 'bench' : 'desk'} />
     </DeviceOf>
@@ -58,6 +59,7 @@ function DeskShell({ who, places, labName, day, isDemo, path, children }: Props 
         </div>
       </header>
       <main id="page" tabIndex={-1} className="flex-1 px-4 pb-16 outline-none sm:px-10">
+        <ShellTray />
         {children}
       </main>
       <footer

@@ -5,5 +5,7 @@ export const benchJarAddress = z.object({ code: z.string().trim().min(1).max(60)
 
 export const benchKeys = {
   today: '/api/bench',
+  days: '/api/bench/days',
+  revision: '/api/bench/revision',
   jar: (code: string) => `/api/bench/${encodeURIComponent(code)}`,
 }

@@ -19,9 +19,10 @@ export class ClientError extends Error {
   }
 }
 
-/** For SWR. */
-export async function fetcher<T>(url: string): Promise<T> {
-  return readAnswer<T>(await reach(url, { headers: { accept: 'application/json' } }))
+/** For SWR. With `personId` it is refused where somebody else has signed in here meanwhile. */
+export async function fetcher<T>(url: string, personId?: string): Promise<T> {
+  const who = personId ? { 'stillstand-person': personId } : undefined
+  return readAnswer<T>(await reach(url, { headers: { accept: 'application/json', ...who } }))
 }
 
 /**

@@ -24,6 +24,7 @@ const publicPages = [
   'app/(auth)/reset/page.tsx',
   'app/(auth)/setup/page.tsx',
   'app/(auth)/sign-in/page.tsx',
+  'app/(device)/shell/page.tsx',
 ]
 
 let t: TestDatabase

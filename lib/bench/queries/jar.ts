@@ -4,8 +4,8 @@ import type { Db } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
 import { readJarCode } from '@/lib/jar/rules'
 import { spokenDay } from '@/lib/study/rules/calendar'
-import { jarsToRead } from './jars'
-import { getLabDay } from './lab-day'
+import { jarsToRead, type BenchJarRow } from './jars'
+import { getLabDay, type LabDay } from './lab-day'
 import { benchJar } from './bench-jar'
 import { listCurrentSeries, listInitialMeans, listLastReadings } from './values'
 
@@ -16,7 +16,6 @@ export async function getBenchJar(db: Db, _actor: Actor, typedCode: string) {
   const code = readJarCode(typedCode) ?? typedCode.trim().toUpperCase()
   const { zone, now, today } = await getLabDay(db)
   const row = await jarsToRead(db)
-    .select(['jar.version as jarVersion'])
     .where('jar.code', '=', code)
     // What is to be read comes before what was read, then the earliest due, then the newest read.
     .orderBy(sql`pj.state in ('due', 'resting') desc`)
@@ -26,34 +25,28 @@ export async function getBenchJar(db: Db, _actor: Actor, typedCode: string) {
     .executeTakeFirst()
   if (!row) throw refuse.notFound(await whyNotToRead(db, code))
   const only = { batchId: row.batchId, studyStationId: row.studyStationId }
+  const [page] = await listJarPages(db, [row], { zone, now, today }, only)
+  return { ...page!, instruments: await listUsableInstruments(db, today) }
+}
+
+/** The pages of several jars at the price of one; the instruments are the same for all. */
+export async function listJarPages(
+  db: Db,
+  rows: readonly BenchJarRow[],
+  { zone, now, today }: LabDay,
+  only?: { batchId: string; studyStationId: string },
+) {
+  const studyIds = [...new Set(rows.map((row) => row.studyId))]
   const values = {
     zone,
-    series: await listCurrentSeries(db, [row.studyId]),
-    readings: await listLastReadings(db, [row.studyId], 3, only),
-    initials: await listInitialMeans(db, [row.studyId]),
+    series: await listCurrentSeries(db, studyIds),
+    readings: await listLastReadings(db, studyIds, 3, only),
+    initials: await listInitialMeans(db, studyIds),
   }
-  const jar = benchJar(row, values, today, now)
-  const done = await db
-    .selectFrom('reading as r')
-    .innerJoin('person', 'person.id', 'r.recordedBy')
-    .select([
-      'r.id',
-      'r.attribute',
-      'r.replicate',
-      'r.value',
-      'r.word',
-      'r.typed',
-      'r.measuredAt',
-      'r.isVoid',
-    ])
-    .select(['r.supersedesId', 'r.reason', 'person.initials as by'])
-    .select((eb) => eb.ref('r.doubts').$castTo<{ reason: string; sentence: string }[]>().as('doubts'))
-    .where('r.pullJarId', '=', row.pullJarId)
-    .orderBy('r.recordedAt')
-    .orderBy('r.id')
-    .execute()
-  return {
-    ...jar,
+  const pullJarIds = rows.map((row) => row.pullJarId)
+  const done = pullJarIds.length > 0 ? await listReadingsOf(db, pullJarIds) : []
+  return rows.map((row) => ({
+    ...benchJar(row, values, today, now),
     today,
     now,
     zone,
@@ -79,13 +72,25 @@ export async function getBenchJar(db: Db, _actor: Actor, typedCode: string) {
       row.state === 'due' &&
       row.windowFrom > today &&
       !row.mishaps.some((one) => one.kind === 'pulled early'),
-    instruments: await listUsableInstruments(db, today),
     /** What was already read of this jar in this pull, with corrections and voids. */
-    readings: done,
-  }
+    readings: done.filter((reading) => reading.pullJarId === row.pullJarId),
+  }))
 }
 
-async function listUsableInstruments(db: Db, today: string) {
+async function listReadingsOf(db: Db, pullJarIds: string[]) {
+  return db
+    .selectFrom('reading as r')
+    .innerJoin('person', 'person.id', 'r.recordedBy')
+    .select(['r.id', 'r.pullJarId', 'r.attribute', 'r.replicate', 'r.value', 'r.word', 'r.typed'])
+    .select(['r.measuredAt', 'r.isVoid', 'r.supersedesId', 'r.reason', 'person.initials as by'])
+    .select((eb) => eb.ref('r.doubts').$castTo<{ reason: string; sentence: string }[]>().as('doubts'))
+    .where('r.pullJarId', 'in', pullJarIds)
+    .orderBy('r.recordedAt')
+    .orderBy('r.id')
+    .execute()
+}
+
+export async function listUsableInstruments(db: Db, today: string) {
   const rows = await db
     .selectFrom('instrument')
     .leftJoinLateral(

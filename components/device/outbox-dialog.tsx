@@ -1,0 +1,67 @@
+'use client'
+
+import { useState } from 'react'
+import { keep } from '@/components/session/keep'
+import { Button } from '@/components/ui/button'
+import { Dialog } from '@/components/ui/dialog'
+import { countWord } from '@/components/ui/count-word'
+import { fetcher } from '@/lib/http/fetcher'
+import { WaitingEntry } from './waiting-entry'
+import type { OutboxOnScreen } from './use-outbox'
+
+/** Everything that is still only on this device, the oldest first, and what can be done with each. */
+export function OutboxDialog({ outbox, onClose }: { outbox: OutboxOnScreen; onClose: () => void }) {
+  const { items, isOnline, isSignedOut, flush } = outbox
+  const [isBusy, setBusy] = useState(false)
+
+  async function sendNow() {
+    setBusy(true)
+    // Who was signed out is asked for the password first, and everything goes out after it.
+    if (isSignedOut)
+      await keep(() => fetcher('/api/session'), { what: `${items.length} entries` }).catch(() => undefined)
+    await flush()
+    setBusy(false)
+  }
+
+  return (
+    <Dialog
+      isOpen
+      onClose={onClose}
+      width={720}
+      density="bench"
+      title={items.length === 0 ? 'Everything is on the server' : titleOf(items.length)}
+      sentence={sentenceOf(isOnline, isSignedOut, items.length)}
+      acts={
+        <>
+          <Button density="bench" onClick={onClose}>
+            Close
+          </Button>
+          {items.length > 0 || isSignedOut ? (
+            <Button density="bench" kind="primary" busy={isBusy} onClick={() => void sendNow()}>
+              {isSignedOut ? 'Sign in and send' : 'Send now'}
+            </Button>
+          ) : null}
+        </>
+      }
+    >
+      {items.length > 0 ? (
+        <ol>
+          {items.map((item) => (
+            <WaitingEntry key={item.id} item={item} outbox={outbox} onLeave={onClose} />
+          ))}
+        </ol>
+      ) : null}
+    </Dialog>
+  )
+}
+
+function titleOf(count: number): string {
+  return `${countWord(count, true)} ${count === 1 ? 'entry is' : 'entries are'} only on this tablet`
+}
+
+function sentenceOf(isOnline: boolean, isSignedOut: boolean, count: number): string {
+  if (count === 0) return 'Nothing waits here.'
+  if (isSignedOut) return 'You were signed out. They go out once you have signed in again.'
+  if (!isOnline) return 'They go out by themselves, once each and in this order, when the network is back.'
+  return 'They go out once each and in this order.'
+}
