@@ -19,6 +19,7 @@ type Visit = {
 const visits: Visit[] = [
   { page: '', who: 'mada', at: '/' },
   { page: 'sign-in', who: null, at: '/sign-in', phone: true },
+  { page: 'shell', who: null, at: '/shell', phone: true },
   { page: 'setup', who: null, at: '/setup' },
   { page: 'reset', who: null, at: '/reset' },
   { page: 'reset/[token]', who: null, at: '/reset/worn-out' },
