@@ -1,5 +1,5 @@
-import { logCycleStep } from '@/lib/cycle/commands'
-import { listCycleSteps } from '@/lib/cycle/queries'
+import { logCycleStep } from '@/lib/cycle/commands/log-half'
+import { listCycleSteps } from '@/lib/cycle/queries/list'
 import { cycleFilter, cycleStep } from '@/lib/cycle/schema'
 import { read, write } from '@/lib/http/route'
 

@@ -1,6 +1,6 @@
 import { newId } from '@/lib/db/id'
 import { weighFilledJar } from '@/lib/jar/commands'
-import { logCycleStep } from '@/lib/cycle/commands'
+import { logCycleStep } from '@/lib/cycle/commands/log-half'
 import { cycleStep } from '@/lib/cycle/schema'
 import { approveVersion } from '@/lib/protocol/commands/approve-version'
 import { createProtocol } from '@/lib/protocol/commands/write-protocol'

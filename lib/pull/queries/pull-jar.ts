@@ -15,6 +15,7 @@ export type CycleHalf = {
   cycle: number
   half: string
   reachedC: number | null
+  coreC: number | null
   isFrozenThrough: boolean | null
   hours: number
 }
@@ -115,7 +116,7 @@ export async function findPullJar(
         'isPulledEarly',
       ),
       sql<CycleHalf[]>`(select coalesce(jsonb_agg(jsonb_build_object('cycle', step.cycle, 'half', step.half,
-          'reachedC', step.reached_c, 'isFrozenThrough', step.is_frozen_through,
+          'reachedC', step.reached_c, 'coreC', step.core_c, 'isFrozenThrough', step.is_frozen_through,
           'hours', extract(epoch from step.ended_at - step.begun_at) / 3600)), '[]')
         from cycle_step step where step.study_station_id = ss.id)`.as('cycleHalves'),
       sql<JarStay[]>`(select coalesce(jsonb_agg(jsonb_build_object('at', m.moved_at, 'name', target.name,

@@ -1,6 +1,7 @@
+import { cycleDoubts } from '@/lib/cycle/rules/shortfall'
 import { AppError } from '@/lib/http/errors'
 import { type AttributeKey, attributeName } from '@/lib/reading/schema/attributes'
-import { conditionDoubts, cycleDoubts, valueDoubts, type EntryDoubt } from '@/lib/reading/rules/entry-doubts'
+import { conditionDoubts, valueDoubts, type EntryDoubt } from '@/lib/reading/rules/entry-doubts'
 import { askedConditions, conditionsIn } from '@/lib/reading/rules/conditions'
 import { weeksSince } from '@/lib/science/months'
 import type { Frame } from '@/lib/series/queries/frame'

@@ -1,9 +1,11 @@
 import type { Actor } from '@/lib/auth/actor'
 import type { Trx } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
-import type { CycleStep } from './schema'
+import { capital } from '@/lib/study/rules/words'
+import { halfName } from '../rules/refusals'
+import type { CycleStep } from '../schema'
 
-/** One half of a freeze-thaw cycle, as it was. Sending it twice keeps one. */
+/** A whole half of a freeze-thaw cycle, typed later from paper. Sending it twice keeps one. */
 export async function logCycleStep(trx: Trx, actor: Actor, input: CycleStep, now: string) {
   const place = await trx
     .selectFrom('studyStation as ss')
@@ -35,9 +37,18 @@ export async function logCycleStep(trx: Trx, actor: Actor, input: CycleStep, now
       `The ${input.half} half of cycle ${input.cycle} is logged already. Reload to see it.`,
     )
   }
+  const begun = await trx
+    .selectFrom('cyclePress')
+    .select('id')
+    .where('studyStationId', '=', input.studyStationId)
+    .where('cycle', '=', input.cycle)
+    .where('half', '=', input.half)
+    .executeTakeFirst()
+  if (begun) throw refuse.conflict(`${capital(halfName(input))} was begun at the board. End it there.`)
   await trx
     .insertInto('cycleStep')
-    .values({ ...input, recordedBy: actor.personId })
+    // Both times are claimed: it was typed after the fact.
+    .values({ ...input, claimedAt: input.endedAt, recordedBy: actor.personId })
     .execute()
   return { id: input.id }
 }
