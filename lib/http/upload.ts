@@ -75,10 +75,22 @@ async function typeOf(filePath: string): Promise<string | undefined> {
   try {
     const head = Buffer.alloc(4100)
     const { bytesRead } = await handle.read(head, 0, head.length, 0)
-    return (await fileTypeFromBuffer(head.subarray(0, bytesRead)))?.mime
+    const start = head.subarray(0, bytesRead)
+    // UTF-16's mark looks like the start of a sound file.
+    const isWide = start[0] === 0xff && start[1] === 0xfe
+    return isWide ? textType(start) : ((await fileTypeFromBuffer(start))?.mime ?? textType(start))
   } finally {
     await handle.close()
   }
+}
+
+/** Text has no signature; what holds no control characters is text, in one byte or in two (UTF-16 with its mark). */
+function textType(head: Uint8Array): string | undefined {
+  const isWide = head[0] === 0xff && head[1] === 0xfe
+  const isText = head.every(
+    (byte) => byte >= 0x20 || [9, 10, 12, 13].includes(byte) || (isWide && byte === 0),
+  )
+  return isText ? 'text/plain' : undefined
 }
 
 function toRefusal(thrown: unknown, maxBytes: number): unknown {

@@ -86,6 +86,49 @@ export const loggedTemperatures = z.object({
 })
 export type LoggedTemperatures = z.input<typeof loggedTemperatures>
 
+/** A logger that reads every five minutes fills this in two years. */
+export const maxLoggerRows = 200_000
+export const maxLoggerBytes = 20_000_000
+
+/** Fields of a form, which come as text. What is not chosen is told by the file itself. */
+export const loggerFields = z.object({
+  id: z.uuid(),
+  isTaken: z.enum(['true', 'false']).transform((text) => text === 'true'),
+  order: z.enum(['day first', 'month first']).nullable().default(null),
+  unit: z.enum(['C', 'F']).nullable().default(null),
+  column: z.coerce.number().int().min(0).max(200).nullable().default(null),
+})
+export type LoggerFields = z.output<typeof loggerFields>
+
+export type LoggerPreview = {
+  isTaken: boolean
+  readAs: {
+    delimiter: string
+    zone: string
+    columns: string[]
+    timeColumns: number[]
+    column: number
+    unit: 'C' | 'F'
+    order: 'day first' | 'month first' | null
+  }
+  asks: 'order' | null
+  freshRows: number
+  /** There already, by their time. */
+  knownRows: number
+  /** There already with another temperature: what is on record stays. */
+  otherRows: { line: number; at: number; temperatureC: number; knownC: number }[]
+  badRows: number
+  bad: { line: number; why: string; text: string }[]
+  notes: string[]
+  from: string | null
+  to: string | null
+  minC: number | null
+  maxC: number | null
+  sample: { line: number; at: string; temperatureC: number }[]
+  /** Who took this very file for this station before. */
+  before: { by: string; at: string } | null
+}
+
 const reasonFor = (what: string) => z.string().trim().min(1, `Say why ${what}.`).max(500)
 
 export const movedJars = z.object({
@@ -126,6 +169,7 @@ export const stationKeys = {
   list: '/api/stations',
   one: (id: string) => `/api/stations/${id}`,
   record: (id: string) => `/api/stations/${id}/temperatures`,
+  loggerFiles: (id: string) => `/api/stations/${id}/logger-files`,
   moves: (id: string) => `/api/stations/${id}/moves`,
   downtimes: (id: string) => `/api/stations/${id}/downtimes`,
   cancelDowntime: (id: string, downtimeId: string) => `/api/stations/${id}/downtimes/${downtimeId}/cancel`,
