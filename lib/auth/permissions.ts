@@ -10,6 +10,8 @@ const everyone = [...lab, 'client'] as const
 export const permissions = {
   'reading.log': ['technician', 'formulator'],
   'photo.add': ['technician', 'formulator'],
+  // The original with what the camera wrote into it, place and all; everybody else gets it without.
+  'photo.audit': ['qa', 'manager'],
   'cycle.log': ['technician', 'formulator'],
   'flag.comment': lab,
   'flag.answer': ['formulator', 'qa'],

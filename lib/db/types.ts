@@ -502,6 +502,16 @@ export interface Photo {
   width: number
 }
 
+export interface PhotoCopy {
+  bytes: number
+  height: number
+  madeBy: string
+  photoId: string
+  recordedAt: Generated<string>
+  sha256: string
+  width: number
+}
+
 export interface Protocol {
   code: string
   createdAt: Generated<string>
@@ -853,6 +863,7 @@ export interface DB {
   password: Password
   person: Person
   photo: Photo
+  photoCopy: PhotoCopy
   protocol: Protocol
   protocolVersion: ProtocolVersion
   pull: Pull

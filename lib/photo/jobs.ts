@@ -1,8 +1,8 @@
-import { keptPreview } from './queries'
+import { keptPreview } from './queries/file'
 
 export const previewQueue = 'photo.preview'
 
 /** Makes the small picture ahead of the first person who looks. */
-export async function makePhotoPreview(data: { sha256: string }): Promise<void> {
-  await keptPreview(data.sha256)
+export async function makePhotoPreview(data: { sha256: string; type: string }): Promise<void> {
+  await keptPreview(data.sha256, data.type)
 }

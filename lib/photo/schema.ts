@@ -15,6 +15,9 @@ export const photoFilter = z.object({
 export const maxPhotoBytes = 25 * 1024 * 1024
 export const maxPhotoPixels = 40_000_000
 export const previewWidth = 480
+/** Longer side of a measuring copy. */
+export const copyPixels = 2000
+export const maxCopyBytes = 6 * 1024 * 1024
 
 export const photoKeys = {
   add: '/api/photos',
@@ -22,5 +25,7 @@ export const photoKeys = {
   ofJar: (study: string, jar: string) =>
     `/api/photos?study=${encodeURIComponent(study)}&jar=${encodeURIComponent(jar)}`,
   preview: (id: string) => `/api/photos/${id}/preview`,
+  copy: (id: string) => `/api/photos/${id}/copy`,
+  proposal: (id: string) => `/api/photos/${id}/proposal`,
   original: (id: string) => `/api/photos/${id}/original`,
 }

@@ -1,22 +1,27 @@
 import { createHash } from 'node:crypto'
-import { mkdtemp, rm } from 'node:fs/promises'
+import { mkdtemp, readdir, rm } from 'node:fs/promises'
 import { tmpdir } from 'node:os'
 import path from 'node:path'
 import { Jimp } from 'jimp'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { GET as list, POST as add } from '@/app/api/photos/route'
+import { GET as copy, POST as addCopy } from '@/app/api/photos/[id]/copy/route'
+import { GET as proposal } from '@/app/api/photos/[id]/proposal/route'
 import { GET as original } from '@/app/api/photos/[id]/original/route'
 import { GET as preview } from '@/app/api/photos/[id]/preview/route'
 import { newId } from '@/lib/db/id'
 import { sql } from 'kysely'
 import { askedJars, benchStudy, jarAt, type BenchStudy } from '../support/bench-study'
 import { call } from '../support/call'
+import { drawnPhoto } from '../support/drawn-photo'
+import { place, withCameraNotes } from '../support/camera-notes'
 import { testDatabase, type Signed, type TestDatabase } from '../support/database'
 
 let t: TestDatabase
 let technician: Signed
 let formulator: Signed
 let client: Signed
+let auditor: Signed
 let study: BenchStudy
 let pullJarId: string
 let folder: string
@@ -30,6 +35,7 @@ beforeAll(async () => {
   technician = await t.person('technician')
   formulator = await t.person('formulator')
   client = await t.person('client')
+  auditor = await t.person('qa')
   study = await benchStudy(t.db, formulator.actor, 2)
   pullJarId = jarAt(await askedJars(t.db, study.studyId), 25, 1, 'watch').pullJarId
 })
@@ -135,6 +141,72 @@ describe('a photo', () => {
   })
 })
 
+describe('what the camera wrote into a photo', () => {
+  it('R08: stays in the original that is kept and audited; others get the picture without the place', async () => {
+    const plain = Buffer.from(await picture(2000, 1500))
+    const bytes = withCameraNotes(plain, 6)
+    const sha256 = createHash('sha256').update(bytes).digest('hex')
+    const id = newId()
+    expect((await send(bytes, id)).status).toBe(200)
+    const bytesFor = async (cookie: string) =>
+      Buffer.from(await (await call(original, { cookie, params: { id } })).response.arrayBuffer())
+    const audited = await bytesFor(auditor.cookie)
+    expect(createHash('sha256').update(audited).digest('hex')).toBe(sha256)
+    expect(audited.includes(place)).toBe(true)
+    const seen = await bytesFor(technician.cookie)
+    expect(seen.includes(place)).toBe(false)
+    expect(seen.includes('GPS')).toBe(false)
+    // The compressed picture itself is untouched, and still says how it is turned.
+    const scan = plain.subarray(plain.indexOf(Buffer.from([0xff, 0xdb])))
+    expect(seen.includes(scan)).toBe(true)
+    const upright = await Jimp.fromBuffer(seen)
+    expect([upright.width, upright.height]).toEqual([1500, 2000])
+  })
+
+  it('its small picture stands upright and says nothing of it', async () => {
+    const id = newId()
+    await send(withCameraNotes(await picture(900, 600), 6), id)
+    const answer = await call(preview, { cookie: technician.cookie, params: { id } })
+    const small = Buffer.from(await answer.response.arrayBuffer())
+    expect(small.includes('Exif')).toBe(false)
+    const { width, height } = await Jimp.fromBuffer(small)
+    expect([width, height]).toEqual([480, 720])
+  })
+})
+
+describe('the copy that is measured on', () => {
+  const sendCopy = (id: string, bytes: Uint8Array) => {
+    const data = new FormData()
+    data.set('file', new Blob([bytes as BlobPart], { type: 'image/jpeg' }), 'copy.jpg')
+    return call(addCopy, { cookie: technician.cookie, params: { id }, body: data })
+  }
+
+  it('brings a proposal near the drawn layers, and the first copy stays', async () => {
+    const { bytes, lines, height } = drawnPhoto(5010, 800)
+    const id = newId()
+    await send(bytes, id)
+    const none = await call(proposal, { cookie: technician.cookie, params: { id } })
+    expect(none.status).toBe(404)
+    expect((await sendCopy(id, bytes)).body).toMatchObject({ height })
+    expect((await sendCopy(id, await picture(600, 800))).body).toMatchObject({ height })
+    const { body } = await call(proposal, { cookie: technician.cookie, params: { id } })
+    const fill = lines!.base - lines!.fillTop
+    for (const line of ['fillTop', 'topEdge', 'bottomEdge', 'base'] as const)
+      expect(Math.abs(body.lines[line] - lines![line]) / fill).toBeLessThan(0.015)
+    const back = await call(copy, { cookie: auditor.cookie, params: { id } })
+    expect(Buffer.from(await back.response.arrayBuffer()).equals(Buffer.from(bytes))).toBe(true)
+  })
+
+  it('is refused where it is too large, of another shape, or says where it was taken', async () => {
+    const id = newId()
+    await send(await picture(2400, 1200), id)
+    expect((await sendCopy(id, await picture(2400, 1200))).status).toBe(413)
+    expect((await sendCopy(id, await picture(900, 900))).status).toBe(422)
+    expect((await sendCopy(id, withCameraNotes(await picture(2000, 1000), 1))).status).toBe(415)
+    expect((await sendCopy(id, await picture(1000, 2000))).status).toBe(200)
+  })
+})
+
 describe('A08: what is no photo is refused and leaves nothing', () => {
   const svg = new TextEncoder().encode(
     '<svg xmlns="http://www.w3.org/2000/svg"><script>alert(1)</script></svg>',
@@ -142,6 +214,10 @@ describe('A08: what is no photo is refused and leaves nothing', () => {
   const heic = new Uint8Array(
     Buffer.concat([Buffer.from([0, 0, 0, 24]), Buffer.from('ftypheic'), Buffer.alloc(60)]),
   )
+  let sound: Buffer
+  beforeAll(async () => {
+    sound = Buffer.from(await picture(64, 48))
+  })
   it.each<[string, () => Uint8Array, number, RegExp]>([
     ['an SVG named as a JPEG', () => svg, 415, /not one of/],
     ['a HEIC photo, saying what to do', () => heic, 415, /most compatible format/],
@@ -152,6 +228,19 @@ describe('A08: what is no photo is refused and leaves nothing', () => {
       415,
       /is none/,
     ],
+    [
+      'a JPEG with a web page behind it',
+      () => new Uint8Array(Buffer.concat([sound, Buffer.from('<HTML><script>alert(1)</script>')])),
+      415,
+      /another kind/,
+    ],
+    [
+      'a JPEG that is an archive as well',
+      () => new Uint8Array(Buffer.concat([sound, Buffer.from('PK\u0003\u0004'), Buffer.alloc(90)])),
+      415,
+      /another kind/,
+    ],
+    ['a JPEG cut short', () => new Uint8Array(sound.subarray(0, sound.length - 40)), 415, /breaks off/],
     ['an empty file', () => new Uint8Array(), 422, /empty/],
     ['26 MB', () => new Uint8Array(26 * 1024 * 1024), 413, /larger than/],
   ])('%s', async (_name, bytes, status, sentence) => {
@@ -160,6 +249,15 @@ describe('A08: what is no photo is refused and leaves nothing', () => {
     expect(answer.body.error.sentence).toMatch(sentence)
     expect(answer.status).toBe(status)
     expect(await count()).toBe(before)
+  })
+
+  it('takes at most 150 MB more memory for 24 MB, and leaves nothing behind', async () => {
+    const before = process.memoryUsage.rss()
+    const tail = Buffer.alloc(24_000_000, 1)
+    const { status } = await send(new Uint8Array(Buffer.concat([sound.subarray(0, 200), tail])))
+    expect(status).toBe(415)
+    expect((process.memoryUsage.rss() - before) / 1e6).toBeLessThan(150)
+    expect(await readdir(path.join(folder, 'files', 'incoming'))).toEqual([])
   })
 
   it('a name that climbs is text only', async () => {

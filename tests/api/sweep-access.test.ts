@@ -158,6 +158,7 @@ describe('pages', () => {
 const table: Record<Permission, string> = {
   'reading.log': 'yes yes no no no',
   'photo.add': 'yes yes no no no',
+  'photo.audit': 'no no yes yes no',
   'cycle.log': 'yes yes no no no',
   'flag.comment': 'yes yes yes yes no',
   'flag.answer': 'no yes yes no no',

@@ -1,6 +1,6 @@
 import { read, upload } from '@/lib/http/route'
-import { addPhoto, photoTypes } from '@/lib/photo/commands'
-import { listPhotos } from '@/lib/photo/queries'
+import { addPhoto, photoTypes } from '@/lib/photo/commands/add-photo'
+import { listPhotos } from '@/lib/photo/queries/list'
 import { maxPhotoBytes, photoFields, photoFilter } from '@/lib/photo/schema'
 
 export const GET = read({

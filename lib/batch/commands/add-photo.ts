@@ -2,7 +2,7 @@ import type { Actor } from '@/lib/auth/actor'
 import type { Trx } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
 import type { Received } from '@/lib/http/upload'
-import { keepPicture } from '@/lib/photo/commands'
+import { keepPicture } from '@/lib/photo/commands/add-photo'
 import type { BatchPhotoFields } from '../schema'
 import { findBatch, whenDone } from './find-batch'
 

@@ -1,13 +1,12 @@
 import type { Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
-import { originalOf, previewOf } from '@/lib/photo/queries'
+import { originalOf, previewOf } from '@/lib/photo/queries/file'
 
 type Address = { code: string; id: string }
 
-/** The file as it came, byte for byte. */
-export async function getBatchOriginal(db: Db, _actor: Actor, address: Address) {
-  return originalOf(await findPhoto(db, address), address.code)
+export async function getBatchOriginal(db: Db, actor: Actor, address: Address) {
+  return originalOf(actor, await findPhoto(db, address), address.code)
 }
 
 export async function getBatchPreview(db: Db, _actor: Actor, address: Address) {

@@ -6,8 +6,8 @@ import path from 'node:path'
 const isIn = (file, ...folders) => folders.some((folder) => file.startsWith(`${folder}/`))
 /** Rooms that draw: distances, areas and round axis steps are theirs; what is drawn is computed elsewhere. */
 const draws = (file) => isIn(file, 'components/marks', 'components/charts')
-/** Rooms whose scripts invent what a demo's or a simulated laboratory finds; nothing of it is shown as computed. */
-const invents = (file) => isIn(file, 'lib/cli/seed', 'lib/cli/simulate')
+/** Rooms whose scripts invent what a demo's or a simulated laboratory finds or photographs; nothing of it is shown as computed. */
+const invents = (file) => isIn(file, 'lib/cli/seed', 'lib/cli/simulate', 'lib/cli/photo-check')
 /** What the product is written in, lib/science aside; tools in plain modules compute nothing that is shown. */
 const computesElsewhere = (file) =>
   /\.tsx?$/.test(file) && isIn(file, 'app', 'components', 'lib') && !isIn(file, 'lib/science')

@@ -4,7 +4,7 @@ import { tmpdir } from 'node:os'
 import path from 'node:path'
 import { Jimp } from 'jimp'
 import { newId } from '@/lib/db/id'
-import { addPhoto } from '@/lib/photo/commands'
+import { addPhoto } from '@/lib/photo/commands/add-photo'
 import type { Filling } from './context'
 import type { Noise } from './noise'
 

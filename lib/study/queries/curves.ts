@@ -1,6 +1,6 @@
 import type { Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
-import { listPhotos } from '@/lib/photo/queries'
+import { listPhotos } from '@/lib/photo/queries/list'
 import { trendBand } from '@/lib/science/trend'
 import { weeksBetween } from '@/lib/study/rules/calendar'
 import { curvesFinding } from '@/lib/study/rules/curves'

@@ -1,7 +1,7 @@
 import { addBatchPhoto } from '@/lib/batch/commands/add-photo'
 import { batchAddress, batchPhotoFields } from '@/lib/batch/schema'
 import { upload } from '@/lib/http/route'
-import { photoTypes } from '@/lib/photo/commands'
+import { photoTypes } from '@/lib/photo/commands/add-photo'
 import { maxPhotoBytes } from '@/lib/photo/schema'
 
 export const POST = upload({

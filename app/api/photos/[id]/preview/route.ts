@@ -1,5 +1,5 @@
 import { download } from '@/lib/http/route'
-import { getPreview } from '@/lib/photo/queries'
+import { getPreview } from '@/lib/photo/queries/file'
 import { photoAddress } from '@/lib/photo/schema'
 
 export const GET = download({

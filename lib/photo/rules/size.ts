@@ -7,14 +7,6 @@ export function imageSize(bytes: Uint8Array): { width: number; height: number } 
   return pngSize(view) ?? jpegSize(view)
 }
 
-export function originalKey(sha256: string): string {
-  return `original/${sha256.slice(0, 2)}/${sha256}`
-}
-
-export function previewKey(sha256: string): string {
-  return `preview/${sha256.slice(0, 2)}/${sha256}.jpg`
-}
-
 /** Signature, then the IHDR chunk, which always comes first. */
 function pngSize(view: DataView): { width: number; height: number } | null {
   if (view.byteLength < 24 || view.getUint32(0) !== 0x89504e47 || view.getUint32(4) !== 0x0d0a1a0a)

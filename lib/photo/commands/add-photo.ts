@@ -6,9 +6,11 @@ import { refuse } from '@/lib/http/errors'
 import type { Received } from '@/lib/http/upload'
 import { enqueue } from '@/lib/jobs/enqueue'
 import { claimedInstant } from '@/lib/reading/rules/claimed-time'
-import { previewQueue } from './jobs'
-import { imageSize, originalKey } from './rules'
-import { maxPhotoPixels, type PhotoFields } from './schema'
+import { previewQueue } from '../jobs'
+import { originalKey } from '../rules/keys'
+import { imageSize } from '../rules/size'
+import { wrongWith } from '../rules/whole'
+import { maxPhotoPixels, type PhotoFields } from '../schema'
 
 const heic = ['image/heic', 'image/heif', 'image/heic-sequence', 'image/heif-sequence']
 /** What the upload lets through to here, the last of them only to be refused with a way out. */
@@ -49,7 +51,7 @@ export async function keepPicture(trx: Trx, { sha256, bytes, type, originalName,
   const files = storage()
   const key = originalKey(sha256)
   if (!(await files.has(key))) await files.put(key, path, type)
-  await enqueue(trx, previewQueue, { sha256 })
+  await enqueue(trx, previewQueue, { sha256, type })
   return { sha256, bytes, type, ...size, originalName }
 }
 
@@ -76,7 +78,8 @@ async function checkPicture(
       'This photo is HEIC, which browsers cannot show. Set the camera to the most compatible format (JPEG), or save the photo as JPEG, and send it again.',
     )
   }
-  const size = imageSize(await readFile(file.path))
+  const bytes = await readFile(file.path)
+  const size = imageSize(bytes)
   if (!size) throw refuse.unsupported('This file starts like a picture but is none. Take the photo again.')
   if (size.width * size.height > maxPhotoPixels) {
     const megapixels = Math.round((size.width * size.height) / 1e6)
@@ -84,5 +87,12 @@ async function checkPicture(
       `The photo has ${megapixels} megapixels; at most ${maxPhotoPixels / 1e6} can be taken. Take it at a lower resolution.`,
     )
   }
+  const wrong = wrongWith(bytes)
+  if (wrong === 'cut short')
+    throw refuse.unsupported('The photo breaks off before its end. Take it again, or send the whole file.')
+  if (wrong === 'two files in one')
+    throw refuse.unsupported(
+      'A file of another kind is hidden in this photo. Send the photo as the camera made it.',
+    )
   return size
 }

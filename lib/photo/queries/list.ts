@@ -1,0 +1,45 @@
+import { isClientOnly, type Actor } from '@/lib/auth/actor'
+import type { Db } from '@/lib/db/client'
+
+export type Photo = Awaited<ReturnType<typeof listPhotos>>[number]
+
+/** Photos of a study, or of one of its jars, in the order they were taken. */
+export async function listPhotos(db: Db, actor: Actor, studyCode: string, jarCode?: string) {
+  return visiblePhotos(db, actor)
+    .innerJoin('jar', 'jar.id', 'photo.jarId')
+    .leftJoin('pullJar', 'pullJar.id', 'photo.pullJarId')
+    .leftJoin('pull', 'pull.id', 'pullJar.pullId')
+    .leftJoin('photoCopy as copy', 'copy.photoId', 'photo.id')
+    .innerJoin('person', 'person.id', 'photo.takenBy')
+    .select([
+      'photo.id',
+      'photo.width',
+      'photo.height',
+      'photo.takenAt',
+      'photo.pullJarId',
+      'copy.width as copyWidth',
+      'copy.height as copyHeight',
+      'jar.id as jarId',
+      'jar.code as jarCode',
+      'jar.batchId',
+      'jar.studyStationId',
+      'pull.timeWeeks',
+      'pull.label',
+      'person.initials as takenBy',
+    ])
+    .where('study.code', '=', studyCode)
+    .$if(jarCode !== undefined, (query) => query.where('jar.code', '=', jarCode!))
+    .orderBy('photo.takenAt')
+    .orderBy('photo.id')
+    .execute()
+}
+
+/** Those of studies the actor may see. */
+export function visiblePhotos(db: Db, actor: Actor) {
+  return db
+    .selectFrom('photo')
+    .innerJoin('study', 'study.id', 'photo.studyId')
+    .$if(isClientOnly(actor), (query) =>
+      query.where('study.isShared', '=', true).where('study.clientId', '=', actor.clientId),
+    )
+}
