@@ -2,6 +2,7 @@ import type { BenchField } from '@/lib/bench/rules'
 import { kindEntry, layersEntry } from '@/components/bench/kind-entry'
 import { newId } from '@/lib/db/id'
 import type { EntryDetail } from '@/lib/reading/schema/entry'
+import type { PhotoLinesOfReading } from '@/lib/reading/schema/photo-lines'
 import { readTyped } from '@/lib/reading/schema/typed'
 
 /** One input of the jar's screen. Layers have two; a replicate is an input of its own. */
@@ -20,6 +21,8 @@ export type Draft = {
   confirmed: string[]
   instruments: Record<string, string>
   note: string
+  /** Where the layers were measured on a photo; typed over, they are a ruler's again. */
+  photoLines?: PhotoLinesOfReading
   begunAt: string
 }
 
@@ -80,7 +83,13 @@ export function entriesOf(
     }
     if (slot.kind === 'layer') {
       const read = layersEntry(slot.field.attribute, text, fillHeightMm)
-      return read ? [{ ...base, ...read }] : []
+      if (!read) return []
+      const { photoLines } = draft
+      const onPhoto = photoLines && {
+        typed: `${read.typed}, on the photo`,
+        detail: { ...read.detail, photoLines },
+      }
+      return [{ ...base, ...(onPhoto ?? read) }]
     }
     const typed = text(slot.key)
     if (typed === '') return []

@@ -1,9 +1,10 @@
 import { KeepButton, whyNotKeep } from '@/components/bench/keep-button'
 import { hasOwnPanel, KindPanel } from '@/components/bench/kind-panel'
 import { LayerExtras } from '@/components/bench/layer-extras'
-import { NotePanel, PhotoPanel, WordPanel } from '@/components/bench/other-panels'
+import { NotePanel, WordPanel } from '@/components/bench/other-panels'
 import type { JarEntry } from '@/components/bench/use-jar-entry'
 import { ValuePanel } from '@/components/bench/value-panel'
+import { PhotoPanel } from '@/components/photo/photo-panel'
 import { ErrorNote } from '@/components/ui/error-note'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 
@@ -59,7 +60,12 @@ export function FieldPanel({
             <WordPanel slot={here.slot} text={here.text} onText={(text) => entry.type(here.key, text)} />
           ) : null}
           {entry.at === 'note' ? <NotePanel note={entry.draft.note} onNote={entry.note} /> : null}
-          {entry.at === 'photo' ? <PhotoPanel jar={jar} /> : null}
+          {entry.at === 'photo' ? (
+            <PhotoPanel
+              jar={jar}
+              onMeasured={entry.slots.some((s) => s.kind === 'layer') ? entry.measure : null}
+            />
+          ) : null}
           <div className="ml-auto mt-4 max-w-[300px]">{keepButton}</div>
         </>
       )}

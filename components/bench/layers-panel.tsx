@@ -76,6 +76,13 @@ export function LayersPanel({ jar, entry }: { jar: BenchJarPage; entry: JarEntry
             </p>
           ) : null}
         </div>
+        <button
+          type="button"
+          onClick={() => entry.goTo('photo')}
+          className="min-h-16 text-17 underline underline-offset-4"
+        >
+          {draft.photoLines ? 'Measured on the photo' : 'Measure on a photo'}
+        </button>
         <FieldBand
           field={top.field}
           now={verdict?.state === 'value' ? verdict.value : null}

@@ -12,6 +12,8 @@ import type { OutboxOnScreen } from '@/components/device/use-outbox'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 import { ClientError, send } from '@/lib/http/fetcher'
 import { pullKeys } from '@/lib/pull/schema'
+import type { PhotoLinesOfReading } from '@/lib/reading/schema/photo-lines'
+import { separationOfLines } from '@/lib/science/photo-lines'
 
 type Options = {
   jar: BenchJarPage
@@ -52,12 +54,26 @@ export function useJarEntry({ jar, outbox, mayType, onChange, onDone }: Options)
 
   function type(key: string, text: string) {
     const id = slots.find((s) => s.key === key)
-    setDraft((d) => ({
+    setDraft(({ photoLines, ...d }) => ({
       ...withIds(d, slots),
       texts: { ...d.texts, [key]: text },
       // A changed number is a new question.
       confirmed: d.confirmed.filter((c) => id === undefined || c !== `${id.field.attribute}.${id.replicate}`),
+      ...(photoLines && id?.kind !== 'layer' ? { photoLines } : {}),
     }))
+  }
+
+  /** Both layers at once, from lines on a photo. */
+  function measure(photoLines: PhotoLinesOfReading) {
+    const top = slots.find((s) => s.part === 'top')
+    const bottom = slots.find((s) => s.part === 'bottom')
+    if (!top || !bottom) return
+    const shares = separationOfLines(photoLines.lines)
+    const mm = (percent: number) => ((percent / 100) * (jar.fillHeightMm ?? 0)).toFixed(1)
+    type(top.key, mm(shares.topPercent))
+    type(bottom.key, mm(shares.bottomPercent))
+    setDraft((d) => ({ ...d, photoLines }))
+    setAt(top.key)
   }
 
   function chooseInstrument(slot: Slot, id: string) {
@@ -138,7 +154,7 @@ export function useJarEntry({ jar, outbox, mayType, onChange, onDone }: Options)
       draft.instruments[`${slot.field.attribute}.${slot.replicate}`] ?? dayInstrument(jar, slot),
     goTo: setAt,
     note: (note: string) => setDraft((d) => ({ ...d, note })),
-    ...{ type, step, save, done, chooseInstrument },
+    ...{ type, measure, step, save, done, chooseInstrument },
     askNoMore: () => setAsked(null),
     decideLater: () => setTwice(null),
   }

@@ -1,10 +1,17 @@
 'use client'
 
-import { useEffect, useMemo } from 'react'
+import { useEffect, useMemo, type ReactNode } from 'react'
 import type { PhotoOnItsWay } from './use-photos'
 
 /** Photos that are still only on this device, each with how far it is or why it was not taken. */
-export function PhotosOnTheirWay({ photos }: { photos: readonly PhotoOnItsWay[] }) {
+export function PhotosOnTheirWay({
+  photos,
+  act,
+}: {
+  photos: readonly PhotoOnItsWay[]
+  /** What can be done with one before it has gone out. */
+  act?: (photo: PhotoOnItsWay) => ReactNode
+}) {
   if (photos.length === 0) return null
   return (
     <ul className="mt-3 flex flex-wrap gap-4" data-screen-only>
@@ -15,6 +22,7 @@ export function PhotosOnTheirWay({ photos }: { photos: readonly PhotoOnItsWay[] 
             {photo.refused ??
               (photo.percent === null ? 'waits on this tablet' : `sending, ${photo.percent} %`)}
           </p>
+          {act?.(photo)}
           {photo.refused ? (
             <button type="button" className="min-h-[var(--hit)] underline" onClick={photo.drop}>
               Put it away

@@ -1,5 +1,6 @@
 import { ScienceError } from '@/lib/science/guard'
 import { separation } from '@/lib/science/separation'
+import { separationOnPhoto } from './photo-lines'
 import { percentOf } from '@/lib/science/percent'
 import {
   computed,
@@ -19,7 +20,7 @@ export function hairlineMm(rulerMm: number): number {
 
 /** Layers of free oil and of water or serum; a cream layer and bleed are noted apart and do not count. */
 export function layersValue(entry: TypedEntry, { jar, planned }: ValueContext): EntryValue {
-  const { bleed, creamMm, isTopHairline, isBottomHairline } = entry.detail
+  const { bleed, creamMm, isTopHairline, isBottomHairline, photoLines } = entry.detail
   const rulerMm = planned?.rulerMm ?? plainRulerMm
   const topMm = isTopHairline ? hairlineMm(rulerMm) : (entry.detail.topMm ?? 0)
   const bottomMm = isBottomHairline ? hairlineMm(rulerMm) : (entry.detail.bottomMm ?? 0)
@@ -57,8 +58,11 @@ export function layersValue(entry: TypedEntry, { jar, planned }: ValueContext): 
     )
   }
   try {
-    const { percent, topPercent, bottomPercent } = separation({ totalMm, topMm, bottomMm })
-    const isUnderRuler = percent > 0 && topMm < rulerMm && bottomMm < rulerMm
+    const heights = { totalMm, topMm, bottomMm }
+    const { percent, topPercent, bottomPercent } = photoLines
+      ? separationOnPhoto(photoLines, heights)
+      : separation(heights)
+    const isUnderRuler = !photoLines && percent > 0 && topMm < rulerMm && bottomMm < rulerMm
     return {
       value: computed(percent),
       word: null,
@@ -72,6 +76,11 @@ export function layersValue(entry: TypedEntry, { jar, planned }: ValueContext): 
     }
   } catch (error) {
     if (!(error instanceof ScienceError)) throw error
+    if (photoLines)
+      throw new ImpossibleEntry(
+        'detail.photoLines',
+        'The lines on the photo are out of order: fill top, edge of the oil, edge of the water and base follow one another downwards. Move them.',
+      )
     throw new ImpossibleEntry(
       'detail.bottomMm',
       `Both layers together are higher than the fill of ${totalMm} mm. Measure them again.`,

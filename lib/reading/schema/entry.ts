@@ -1,6 +1,7 @@
 import * as z from '@/lib/http/zod'
 import { paths } from '../rules/conditions'
 import { attributeKey } from './attributes'
+import { photoLines } from './photo-lines'
 
 const measured = z.number().min(-1e12).max(1e12)
 
@@ -23,6 +24,8 @@ export const entryDetail = z.strictObject({
   isBottomHairline: z.literal(true).optional(),
   /** A cream layer of an oil-in-water lotion, apart from oil and water. */
   creamMm: measured.optional(),
+  /** Layers measured on a photo rather than with a ruler. */
+  photoLines: photoLines.optional(),
   grossG: measured.optional(),
   word: z.string().max(60).optional(),
   sampleTemperatureC: measured.optional(),

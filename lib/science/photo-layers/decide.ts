@@ -117,14 +117,32 @@ export function decide(
     base = strongest.at
     reasons.push('A thin layer at the foot may be the glass itself.')
   }
-  const within1 = (from: number, to: number) =>
+  const fill = base - fillTop
+  const strengthAt = (row: number) => edges.find(({ at }) => at === row)?.strength ?? 0
+  const isBetween = (from: number, to: number) =>
     inner.some(({ at, strength }) => at > from + 2 * near && at < to - 2 * near && strength > 8)
-  if (within1(fillTop, topEdge) || within1(bottomEdge, base))
+  const isBeside = (row: number) =>
+    inner.some(({ at }) => at !== row && at < bottomEdge + near && Math.abs(at - row) < 0.025 * fill)
+  const emulsion = coloursOf(profile, { from: topEdge, to: bottomEdge })
+  const looksAlike = (from: number, to: number) =>
+    apartInLight(coloursOf(profile, padded({ from, to })), emulsion, 1, 0.22) < 12
+  if (isBetween(fillTop, topEdge) || isBetween(bottomEdge, base))
     reasons.push('More edges show in a layer than a layer has.')
-  if (topEdge - fillTop + base - bottomEdge > 0.45 * (base - fillTop))
+  if (topEdge - fillTop + base - bottomEdge > 0.45 * fill)
     reasons.push('The layers would be more than nearly half of the fill.')
-  void below
-  void noise
+  if ([fillTop, topEdge, bottomEdge].some((row) => strengthAt(row) < 16)) reasons.push('An edge is faint.')
+  if (isBeside(fillTop) && fillTop === topEdge) reasons.push('A thin film may lie on the fill.')
+  if (
+    (topEdge > fillTop && looksAlike(fillTop, topEdge)) ||
+    (bottomEdge < base && looksAlike(bottomEdge, base))
+  )
+    reasons.push('A layer and the emulsion look alike.')
+  if (
+    options.some(
+      ({ at, strength }) => strength > 0.4 * strengthAt(base) && Math.abs(at - base) > 0.014 * fill,
+    )
+  )
+    reasons.push('Two lines could be the base.')
   return {
     sureness: reasons.length === 0 ? 'sure' : 'look again',
     reasons,

@@ -1,0 +1,58 @@
+import type { PhotoLines } from '@/lib/science/photo-lines'
+import { lineNames, lineOrder, type Line } from './lines'
+
+type Props = {
+  src: string
+  alt: string
+  width: number
+  height: number
+  lines: PhotoLines
+  axisX: number
+  tiltDegrees: number
+  /** The line in hand. */
+  picked?: Line
+}
+
+/** A photo under its four lines, each named at its end. */
+export function PhotoWithLines({ src, alt, width, height, lines, axisX, tiltDegrees, picked }: Props) {
+  const slope = Math.tan((tiltDegrees * Math.PI) / 180)
+  const at = (line: Line, x: number) => lines[line] - (x - axisX) * slope
+  const text = height / 36
+  return (
+    <>
+      {/* eslint-disable-next-line @next/next/no-img-element -- in memory, or served through a permission check */}
+      <img src={src} alt={alt} className="block h-auto w-full select-none" draggable={false} />
+      <svg viewBox={`0 0 ${width} ${height}`} className="absolute inset-0 h-full w-full" aria-hidden>
+        {lineOrder.map((line) => (
+          <g key={line}>
+            {(['halo', 'line'] as const).map((kind) => (
+              <line
+                key={kind}
+                x1={0}
+                y1={at(line, 0)}
+                x2={width}
+                y2={at(line, width)}
+                stroke={kind === 'halo' ? '#FFFFFF' : '#0E1D17'}
+                strokeWidth={(kind === 'halo' ? 4 : 1.5) + (line === picked ? 2 : 0)}
+                vectorEffect="non-scaling-stroke"
+              />
+            ))}
+            <text
+              x={width - text * 0.4}
+              y={at(line, width) + (line === 'fillTop' || line === 'bottomEdge' ? -0.4 * text : 1.05 * text)}
+              fontSize={text}
+              fontWeight={line === picked ? 700 : 400}
+              textAnchor="end"
+              stroke="#FFFFFF"
+              strokeWidth={text / 4}
+              paintOrder="stroke"
+              style={{ fill: '#0E1D17' }}
+            >
+              {lineNames[line]}
+            </text>
+          </g>
+        ))}
+      </svg>
+    </>
+  )
+}

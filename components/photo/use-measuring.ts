@@ -1,0 +1,79 @@
+'use client'
+
+import { useEffect, useState } from 'react'
+import { newId } from '@/lib/db/id'
+import { fetcher, send } from '@/lib/http/fetcher'
+import { photoKeys } from '@/lib/photo/schema'
+import type { PhotoProposal } from '@/lib/science/photo-layers/propose'
+import { measuringCopy, sizedCopy, type MeasuringCopy } from './measuring-copy'
+
+export type PhotoToMeasure = {
+  id: string
+  takenAt: string
+  /** In hand where it was taken on this device a moment ago, or waits to go out. */
+  file: Blob | null
+  isSent: boolean
+}
+
+export type Proposing =
+  /** None: the server is not reached, or makes nothing of it. */
+  { state: 'waiting' | 'none' } | { state: 'there'; proposal: PhotoProposal }
+
+/** The copy to measure on, and what the server makes of it once it has it. By hand it works without the server too. */
+export function useMeasuring(photo: PhotoToMeasure) {
+  const [copy, setCopy] = useState<(MeasuringCopy & { url: string; isKept: boolean }) | null>(null)
+  const [proposing, setProposing] = useState<Proposing>({ state: 'waiting' })
+  const [isUnreadable, setUnreadable] = useState(false)
+  const { id, file, isSent } = photo
+
+  useEffect(() => {
+    let isOver = false
+    let url: string | null = null
+    async function begin() {
+      const kept = file ? null : await reached(photoKeys.copy(id))
+      const made = kept
+        ? await sizedCopy(kept)
+        : await measuringCopy(file ?? (await reached(photoKeys.original(id))) ?? new Blob())
+      if (isOver) return
+      url = URL.createObjectURL(made.blob)
+      setCopy({ ...made, url, isKept: kept !== null })
+    }
+    begin().catch(() => (isOver ? undefined : setUnreadable(true)))
+    return () => {
+      isOver = true
+      if (url) URL.revokeObjectURL(url)
+    }
+  }, [id, file])
+
+  useEffect(() => {
+    if (!copy || !isSent) return
+    let isOver = false
+    void proposed(id, copy.isKept ? null : copy.blob).then((proposal) => {
+      if (!isOver) setProposing(proposal ? { state: 'there', proposal } : { state: 'none' })
+    })
+    return () => {
+      isOver = true
+    }
+  }, [id, copy, isSent])
+
+  return { copy, proposing, isUnreadable }
+}
+
+async function reached(url: string): Promise<Blob | null> {
+  const response = await fetch(url, { credentials: 'same-origin' }).catch(() => null)
+  return response?.ok ? response.blob() : null
+}
+
+/** Null where the server is not reached or cannot read it: the lines are then set by hand. */
+async function proposed(id: string, copy: Blob | null): Promise<PhotoProposal | null> {
+  try {
+    if (copy) {
+      const form = new FormData()
+      form.append('file', copy, 'copy.jpg')
+      await send(photoKeys.copy(id), 'POST', form, { key: newId() })
+    }
+    return await fetcher<PhotoProposal>(photoKeys.proposal(id))
+  } catch {
+    return null
+  }
+}
