@@ -19,7 +19,6 @@ export function decide(
   profile: Profile,
   within: { top: number; bottom: number },
   edges: readonly Edge[],
-  noise: number,
 ): Decision {
   const jar = within.bottom - within.top
   const reasons: string[] = []
@@ -68,7 +67,6 @@ export function decide(
 
   // Above it: oil, headspace, lid.
   const above = segments.slice(0, first).filter((s) => length(s) > near)
-  const below = segments.slice(end + 1).filter((s) => length(s) > 0.5 * near)
   const restBelow = bottom - bottomEdge
   if (above.length <= 1 && restBelow < 0.018 * jar)
     return { sureness: 'shows nothing', reasons: ['The jar is one colour from lid to foot.'], lines: null }

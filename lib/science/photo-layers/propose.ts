@@ -28,10 +28,10 @@ export function proposeLines(picture: Picture): PhotoProposal {
   const profile = profileOf(small, outline)
   const within = extent(small, across, sharpness(across), outline)
   if (!within) return { ...none, sureness: 'look again', reasons: ['The jar is too small in the photo.'] }
-  const { edges, noise } = edgesOf(profile, within)
-  const found = decide(profile, within, edges, noise)
+  const edges = edgesOf(profile, within)
+  const found = decide(profile, within, edges)
   const down = Math.cos(outline.tiltRadians)
-  const y = (row: number) => (outline.y + (profile.from + row) * down + 0.0) * small.scale
+  const y = (row: number) => (outline.y + (profile.from + row) * down) * small.scale
   return {
     sureness: found.sureness,
     reasons: found.reasons,

@@ -4,14 +4,11 @@ import { bands, changesDown, type Profile } from './profile'
 /** A row at which the colour changes across most of the jar, with fractions, and how sharply (0 to 441). */
 export type Edge = { at: number; strength: number }
 
-/** What lies between two edges: rows `from` up to `to`, and whether its colour is that of the emulsion. */
+/** What lies between two edges: rows `from` up to `to`. */
 export type Segment = { from: number; to: number }
 
-/** Edges within the rows given, the sharpest of each neighbourhood. `noise` is what an even part of the jar shows. */
-export function edgesOf(
-  profile: Profile,
-  within: { top: number; bottom: number },
-): { edges: Edge[]; noise: number } {
+/** Edges within the rows given, the sharpest of each neighbourhood. */
+export function edgesOf(profile: Profile, within: { top: number; bottom: number }): Edge[] {
   const reach = Math.max(2, Math.round((within.bottom - within.top) * 0.007))
   const changes = changesDown(profile, reach)
   const from = Math.max(reach, within.top - 3 * reach)
@@ -27,7 +24,7 @@ export function edgesOf(
       if (changes[near]! > strength || (changes[near]! === strength && near < row)) isPeak = false
     if (isPeak) edges.push({ at: centre(changes, row, reach), strength })
   }
-  return { edges, noise }
+  return edges
 }
 
 /** Where the change has its weight, around its highest row. */
