@@ -107,6 +107,8 @@ function doubtWords(rule: string): string {
       return 'was read outside the range of its spindle'
     case 'calibration':
       return 'was read with an instrument that wants calibrating'
+    case 'later check':
+      return 'was read before its instrument proved bad'
     case 'conditions':
       return 'was measured otherwise than at the start'
     case 'place':

@@ -1,4 +1,4 @@
-import type { InstrumentPage } from '@/lib/instrument/queries'
+import type { InstrumentPage } from '@/lib/instrument/queries/list'
 import { checkFluidMethod } from '@/lib/science/methods/making'
 import { phSlopeMethod, viscosityMethod } from '@/lib/science/methods/measures'
 import { exactly, factsOf, type FigureFacts } from '@/lib/science/methods/method'

@@ -12,10 +12,10 @@ import { Select } from '@/components/ui/select'
 import { toast } from '@/components/ui/toast'
 import { newId } from '@/lib/db/id'
 import { ClientError, send } from '@/lib/http/fetcher'
-import type { InstrumentPage } from '@/lib/instrument/queries'
+import type { InstrumentPage } from '@/lib/instrument/queries/list'
 import { instrumentKeys } from '@/lib/instrument/schema'
 
-type Instrument = Omit<InstrumentPage, 'calibrations'>
+type Instrument = Omit<InstrumentPage, 'calibrations' | 'checks'>
 type Props = { instrument: Instrument | null; onClose: () => void; onDone: () => void }
 
 /** An instrument as a manager describes it; a viscometer with the constants of its spindles. */

@@ -192,6 +192,7 @@ const knownDoubts: Record<string, string> = {
   jump: 'far from its own line',
   spread: 'replicates lie too far apart',
   torque: 'torque outside its range',
+  'later check': 'its instrument proved bad later',
   'common shift': 'one instrument read off everywhere',
 }
 

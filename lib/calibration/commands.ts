@@ -1,10 +1,14 @@
+import { sql } from 'kysely'
 import type { z } from 'zod'
 import type { Actor } from '@/lib/auth/actor'
-import { judgeCalibration } from '@/lib/calibration/rules'
-import type { newCalibration } from '@/lib/calibration/schema'
+import { judgeCalibration, type CheckLot } from '@/lib/calibration/rules'
+import type { CalibrationCheck, newCalibration } from '@/lib/calibration/schema'
 import type { Trx } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
+import { askAboutReach, lockStudiesOf, reachBack } from '@/lib/instrument/commands/reach-back'
+import { findLots } from '@/lib/lot/queries'
 import { ScienceError } from '@/lib/science/guard'
+import { dayIn } from '@/lib/study/rules/calendar'
 
 /** Append-only: a calibration done again is another row, and the newest one counts. */
 export async function logCalibration(
@@ -16,7 +20,9 @@ export async function logCalibration(
   const instrument = await trx
     .selectFrom('instrument')
     .select(['id', 'code', 'kind'])
+    .select(sql<string>`coalesce((select time_zone from lab limit 1), 'UTC')`.as('zone'))
     .where('id', '=', input.instrumentId)
+    .forNoKeyUpdate()
     .executeTakeFirst()
   if (!instrument) throw refuse.notFound('There is no such instrument. Choose it from the list.')
   const same = await trx
@@ -42,7 +48,13 @@ export async function logCalibration(
       dueOn: 'This is not after the calibration.',
     })
   }
-  const judged = judge(input)
+  const day = dayIn(instrument.zone, calibratedAt)
+  const judged = judge(input, await findLots(trx, lotIdsOf(input.check)), day)
+  const bad = { instrument, kind: 'calibration' as const, at: calibratedAt, day, sentence: judged.sentence }
+  if (judged.result === 'doubtful') {
+    await askAboutReach(trx, bad, input.isConfirmed)
+    await lockStudiesOf(trx, instrument.id)
+  }
   await trx
     .insertInto('calibration')
     .values({
@@ -56,17 +68,33 @@ export async function logCalibration(
       recordedBy: actor.personId,
     })
     .execute()
-  return { id: input.id, result: judged.result, sentence: judged.sentence }
+  const reached =
+    judged.result === 'doubtful' ? await reachBack(trx, actor, bad, { calibrationId: input.id }) : null
+  return { id: input.id, result: judged.result, sentence: judged.sentence, reached }
 }
 
-/** Two buffers of the same pH have no slope: what cannot be computed is refused at its field. */
-function judge(input: z.output<typeof newCalibration>) {
+function lotIdsOf(check: CalibrationCheck): string[] {
+  if (check.kind === 'balance') return []
+  const ids = check.kind === 'meter' ? check.points.map((point) => point.lotId) : [check.lotId]
+  return [...new Set(ids.filter((id) => id !== undefined))]
+}
+
+/** Two buffers of the same pH have no slope: what cannot be computed is refused at its field, in words. */
+function judge({ check }: z.output<typeof newCalibration>, lots: readonly CheckLot[], day: string) {
   try {
-    return judgeCalibration(input.check)
+    return judgeCalibration(check, lots, day)
   } catch (error) {
     if (!(error instanceof ScienceError)) throw error
-    throw refuse.invalid(`The check cannot be computed: ${error.message}. Correct the figures.`, {
-      [`check.${error.field}`]: error.message,
+    const problem = error.message.slice(error.message.indexOf(': ') + 2)
+    const what = fieldWords[error.field] ?? 'A figure'
+    throw refuse.invalid(`${what} ${problem}. Correct the figures.`, {
+      [`check.${error.field}`]: `${what} ${problem}.`,
     })
   }
+}
+
+const fieldWords: Record<string, string> = {
+  points: 'The buffers',
+  temperatureC: 'The temperature',
+  lotId: 'The lot chosen',
 }

@@ -64,8 +64,22 @@ export function fromZod(error: ZodError): AppError {
   for (const issue of error.issues) fields[issue.path.map(String).join('.')] ??= issue.message
   const [first] = Object.entries(fields)
   const others = Object.keys(fields).length - 1
-  // A form's own field shows its sentence where it was typed; a place further in has no such label.
-  const where = first?.[0].includes('.') ? `${first[0]}: ` : ''
+  // A form's own field shows its sentence where it was typed; a place further in is named before it.
+  const where = first?.[0].includes('.') ? `${placeInWords(first[0])}: ` : ''
   const more = others > 0 ? ` ${others} more like it.` : ''
   return refuse.invalid(`${where}${first?.[1] ?? 'This cannot be taken.'}${more}`, fields)
+}
+
+/** "check.points.0.mV" is "Point 1, mV": rows by their number, names in words, what merely holds them left out. */
+export function placeInWords(path: string): string {
+  const parts = path.split('.')
+  const words = parts.flatMap((part, index) => {
+    if (/^\d+$/.test(part)) return []
+    const isRow = /^\d+$/.test(parts[index + 1] ?? '')
+    if (!isRow && index < parts.length - 1) return []
+    const plain = /^m[VG]$/.test(part) ? part : part.replace(/[A-Z]+/g, (upper) => ` ${upper.toLowerCase()}`)
+    return [isRow ? `${plain.replace(/ies$/, 'y').replace(/s$/, '')} ${Number(parts[index + 1]) + 1}` : plain]
+  })
+  const said = words.join(', ') || path
+  return said.charAt(0).toUpperCase() + said.slice(1)
 }

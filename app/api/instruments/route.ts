@@ -1,7 +1,7 @@
 import { read, write } from '@/lib/http/route'
-import { createInstrument } from '@/lib/instrument/commands'
-import { listInstrumentPage } from '@/lib/instrument/queries'
-import { instrumentList } from '@/lib/instrument/rules'
+import { createInstrument } from '@/lib/instrument/commands/keep'
+import { listInstrumentPage } from '@/lib/instrument/queries/list'
+import { instrumentList } from '@/lib/instrument/rules/list'
 import { newInstrument } from '@/lib/instrument/schema'
 
 export const GET = read({

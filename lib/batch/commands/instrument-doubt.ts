@@ -1,7 +1,7 @@
 import { sql } from 'kysely'
 import type { Trx } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
-import type { CalibrationDetail, Spindle } from '@/lib/instrument/queries'
+import type { CalibrationDetail, Spindle } from '@/lib/instrument/queries/list'
 import { instrumentDoubt } from '../rules/weighing'
 
 type Kind = 'balance' | 'meter' | 'viscometer'

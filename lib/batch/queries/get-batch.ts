@@ -4,7 +4,7 @@ import type { Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
 import type { EmulsionType } from '@/lib/formula/schema'
 import { refuse } from '@/lib/http/errors'
-import { listInstruments } from '@/lib/instrument/queries'
+import { listInstruments } from '@/lib/instrument/queries/list'
 import type { BatchState, TypeFound, TypeTestMethod } from '../schema'
 import { listBatchReadings, listEntries, listFilledJars, listPortions } from './list-record'
 

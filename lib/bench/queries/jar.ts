@@ -2,6 +2,7 @@ import { sql } from 'kysely'
 import type { Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
+import { doubtsOf } from '@/lib/reading/queries/doubts'
 import { readJarCode } from '@/lib/jar/rules'
 import { spokenDay } from '@/lib/study/rules/calendar'
 import { jarsToRead, type BenchJarRow } from './jars'
@@ -83,7 +84,7 @@ async function listReadingsOf(db: Db, pullJarIds: string[]) {
     .innerJoin('person', 'person.id', 'r.recordedBy')
     .select(['r.id', 'r.pullJarId', 'r.attribute', 'r.replicate', 'r.value', 'r.word', 'r.typed'])
     .select(['r.measuredAt', 'r.isVoid', 'r.supersedesId', 'r.reason', 'person.initials as by'])
-    .select((eb) => eb.ref('r.doubts').$castTo<{ reason: string; sentence: string }[]>().as('doubts'))
+    .select(doubtsOf('r').as('doubts'))
     .where('r.pullJarId', 'in', pullJarIds)
     .orderBy('r.recordedAt')
     .orderBy('r.id')

@@ -1,7 +1,7 @@
 import { logCalibration } from '@/lib/calibration/commands'
 import { newCalibration } from '@/lib/calibration/schema'
 import { newId } from '@/lib/db/id'
-import { createInstrument } from '@/lib/instrument/commands'
+import { createInstrument } from '@/lib/instrument/commands/keep'
 import { newInstrument } from '@/lib/instrument/schema'
 import { createStation } from '@/lib/station/commands/keep-station'
 import { logTemperatures } from '@/lib/station/commands/log-temperatures'

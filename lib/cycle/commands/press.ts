@@ -1,15 +1,12 @@
 import type { Actor } from '@/lib/auth/actor'
 import type { Trx } from '@/lib/db/client'
 import { AppError, refuse } from '@/lib/http/errors'
-import { claimedInstant } from '@/lib/reading/rules/claimed-time'
+import { doneAt } from '@/lib/reading/rules/claimed-time'
 import { findCyclePlace, type CyclePlace } from '../queries/board'
 import { halfName, refuseBegin, refuseUnlessRunning } from '../rules/refusals'
 import { shortfalls } from '../rules/shortfall'
 import { cycleState, type CycleRecord, type Running } from '../rules/state'
 import type { CyclePressed } from '../schema'
-
-/** What was pressed within two minutes happened now: the server's time is the record. */
-const nowWithinMs = 120_000
 
 export type PressAnswer = { id: string; at: string; shortfalls: string[] }
 
@@ -27,7 +24,7 @@ export async function pressCycle(
     throw refuse.conflict(`Study ${place.studyCode} is closed, so it takes no more cycles.`)
   const record: CycleRecord = { ...place, asked: place.asked ?? undefined }
   const state = cycleState(record, now)
-  const at = instantOf(input, now)
+  const at = doneAt(input, now)
   if (input.press === 'end')
     return endHalf(trx, actor, place, refuseUnlessRunning(state, input), { input, at, record })
   if (input.press === 'begin') {
@@ -71,12 +68,6 @@ async function findPress(trx: Trx, { id, press }: CyclePressed) {
   return press === 'end'
     ? trx.selectFrom('cycleStep').select('endedAt as at').where('id', '=', id).executeTakeFirst()
     : trx.selectFrom('cyclePress').select('at').where('id', '=', id).executeTakeFirst()
-}
-
-function instantOf({ claimedAt, deviceNow }: CyclePressed, now: string): string {
-  if (!claimedAt) return now
-  const { measuredAt } = claimedInstant({ claimedAt, deviceNow: deviceNow ?? now }, now)
-  return Date.parse(now) - Date.parse(measuredAt) < nowWithinMs ? now : measuredAt
 }
 
 type End = { input: Extract<CyclePressed, { press: 'end' }>; at: string; record: CycleRecord }

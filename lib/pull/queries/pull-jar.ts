@@ -1,6 +1,7 @@
 import { sql } from 'kysely'
 import type { Db, Trx } from '@/lib/db/client'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
+import type { InstrumentEvent } from '@/lib/instrument/rules/trust'
 import type { JarStay } from '@/lib/station/rules/moves'
 
 export type UsedInstrument = {
@@ -10,6 +11,8 @@ export type UsedInstrument = {
   spindles: { name: string; constant: number }[]
   dueOn: string | null
   result: string | null
+  /** Newest calibrations and daily checks. */
+  events: InstrumentEvent[]
 }
 export type CycleHalf = {
   cycle: number
@@ -35,6 +38,15 @@ export type KeptEntry = {
 }
 
 type Sent = { instrumentIds?: string[]; entryIds?: string[] }
+
+const instrumentEvents = sql`(select coalesce(jsonb_agg(jsonb_build_object('kind', e.kind, 'at', e.at, 'result', e.result,
+    'sentence', e.sentence)), '[]') from (
+      select 'calibration' as kind, calibrated_at as at, result, coalesce(detail ->> 'sentence', '') as sentence
+        from calibration where instrument_id = i.id
+      union all
+      select 'check', checked_at, result, coalesce(detail ->> 'sentence', '')
+        from instrument_check where instrument_id = i.id
+      order by at desc limit 60) e)`
 
 /** One jar asked for in a pull, with all that a reading of it is judged by. */
 export async function findPullJar(
@@ -104,7 +116,7 @@ export async function findPullJar(
       sql<
         UsedInstrument[]
       >`(select coalesce(jsonb_agg(jsonb_build_object('id', i.id, 'code', i.code, 'kind', i.kind,
-          'spindles', i.spindles, 'dueOn', c.due_on, 'result', c.result)), '[]')
+          'spindles', i.spindles, 'dueOn', c.due_on, 'result', c.result, 'events', ${instrumentEvents})), '[]')
         from instrument i left join lateral (select due_on, result from calibration
           where instrument_id = i.id order by calibrated_at desc, id desc limit 1) c on true
         where i.id = any(${instrumentIds}::uuid[]))`.as('instruments'),

@@ -1,5 +1,6 @@
 import { cycleDoubts } from '@/lib/cycle/rules/shortfall'
 import { AppError } from '@/lib/http/errors'
+import { checkDoubts } from '@/lib/instrument/rules/trust'
 import { type AttributeKey, attributeName } from '@/lib/reading/schema/attributes'
 import { conditionDoubts, valueDoubts, type EntryDoubt } from '@/lib/reading/rules/entry-doubts'
 import { askedConditions, conditionsIn } from '@/lib/reading/rules/conditions'
@@ -65,6 +66,7 @@ export function judgeEntries(
           askedConditions(initialDetail(frame, jar, key), asked),
           dayIn(frame.study.zone, measuredAt),
         ),
+        ...(instrument ? checkDoubts(instrument, measuredAt, (at) => dayIn(frame.study.zone, at)) : []),
         ...common,
       ]
       if (found.length > 0) doubts.set(entry.id, found)

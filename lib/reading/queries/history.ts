@@ -2,6 +2,7 @@ import { sql } from 'kysely'
 import type { Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
+import { doubtsOf } from './doubts'
 import { studiesOf } from '@/lib/study/queries/scope'
 
 export type ReadingVersion = {
@@ -36,7 +37,7 @@ export async function readingHistory(db: Db, actor: Actor, id: string): Promise<
       union all
       select r.id, newer.depth + 1 from reading r join newer on r.supersedes_id = newer.id
     ), chain as (select id, depth from older union select id, depth from newer)
-    select r.id, r.attribute, r.replicate, r.value, r.word, r.typed, r.detail, r.doubts, r.is_void, r.reason,
+    select r.id, r.attribute, r.replicate, r.value, r.word, r.typed, r.detail, ${doubtsOf('r')} as doubts, r.is_void, r.reason,
       r.measured_at, r.claimed_at, r.recorded_at, p.initials as by, p.name as by_name,
       chain.depth = max(chain.depth) over () as is_current
     from chain join reading r on r.id = chain.id join person p on p.id = r.recorded_by

@@ -3,7 +3,7 @@ import type { Db } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
 import { stationWhenRead } from '@/lib/station/queries/stood'
 import { studiesOf } from '@/lib/study/queries/scope'
-import type { EntryDoubt } from '@/lib/series/queries/frame'
+import { doubtsOf } from './doubts'
 
 export type ReadingOfStudy = Awaited<ReturnType<typeof listReadings>>[number]
 
@@ -57,7 +57,7 @@ export async function listReadings(db: Db, actor: Actor, studyCode: string, attr
     ])
     .select((eb) => [
       eb.ref('r.detail').$castTo<Record<string, unknown>>().as('detail'),
-      eb.ref('r.doubts').$castTo<EntryDoubt[]>().as('doubts'),
+      doubtsOf('r').as('doubts'),
     ])
     .where('r.studyId', '=', study.id)
     .$if(attribute !== undefined, (query) => query.where('r.attribute', '=', attribute!))

@@ -1,5 +1,6 @@
 import { sql } from 'kysely'
 import type { Db, Trx } from '@/lib/db/client'
+import { doubtsOf } from './doubts'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
 
 export type ReadingRow = NonNullable<Awaited<ReturnType<typeof findReading>>>
@@ -46,7 +47,7 @@ export async function findReading(db: Db | Trx, id: string, instrumentId: string
     .select([
       sql<ProtocolPlan>`study.plan`.as('plan'),
       sql<Record<string, unknown>>`r.detail`.as('detail'),
-      sql<{ reason: string; sentence: string }[]>`r.doubts`.as('doubts'),
+      doubtsOf('r').as('doubts'),
       sql<string>`app_now()`.as('now'),
       sql<Record<string, unknown> | null>`(select first.detail from reading first
         where first.study_id = r.study_id and first.batch_id = r.batch_id and first.attribute = r.attribute

@@ -5,6 +5,22 @@ const farOffMs = 15 * 60_000
 
 export type Claim = { deviceNow: string; claimedAt: string }
 
+/** What is told within two minutes happened now: the server's time is the record. */
+const nowWithinMs = 120_000
+
+/** When something was done that is told as it is done: now, or the earlier time that the person or a kept entry gives. */
+export function doneAt(
+  claim: { claimedAt?: string | undefined; deviceNow?: string | undefined },
+  now: string,
+) {
+  if (!claim.claimedAt) return now
+  const { measuredAt } = claimedInstant(
+    { claimedAt: claim.claimedAt, deviceNow: claim.deviceNow ?? now },
+    now,
+  )
+  return Date.parse(now) - Date.parse(measuredAt) < nowWithinMs ? now : measuredAt
+}
+
 /**
  * When it happened, by the server's clock: what the device claims, moved by how far the device is off, and never
  * later than now. `clock` says so where it was far off.

@@ -1,5 +1,6 @@
 import { sql } from 'kysely'
 import type { Db, Trx } from '@/lib/db/client'
+import { doubtsOf } from '@/lib/reading/queries/doubts'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
 
 /** A doubt that was found when the reading was taken; whether it is settled is on its flag. */
@@ -119,7 +120,7 @@ async function listFrameReadings(db: Db | Trx, studyId: string) {
     ])
     .select((eb) => [
       eb.ref('r.detail').$castTo<Record<string, unknown>>().as('detail'),
-      eb.ref('r.doubts').$castTo<EntryDoubt[]>().as('doubts'),
+      doubtsOf('r').as('doubts'),
     ])
     .where('r.studyId', '=', studyId)
     .where('r.isVoid', '=', false)

@@ -5,6 +5,7 @@ import { listChoices } from '@/lib/list/queries/choices'
 import { pageOf } from '@/lib/list/queries/page'
 import { likeTyped, naturally, onDays, type Source } from '@/lib/list/queries/source'
 import type { ListQuery } from '@/lib/list/schema'
+import { doubtsOf } from '@/lib/reading/queries/doubts'
 import { attributeName, attributes } from '@/lib/reading/schema/attributes'
 import { ownKeyOf } from '@/lib/reading/schema/own'
 import { stationWhenRead } from '@/lib/station/queries/stood'
@@ -136,7 +137,7 @@ async function entriesOf(db: Db, ids: string[]) {
     ])
     .select((eb) => [
       eb.ref('reading.detail').$castTo<ReadingDetail>().as('detail'),
-      eb.ref('reading.doubts').$castTo<{ reason: string; sentence: string }[]>().as('doubts'),
+      doubtsOf('reading').as('doubts'),
     ])
     .select(ownOf('study', 'reading'))
     .select(

@@ -1,6 +1,6 @@
 import { read, write } from '@/lib/http/route'
-import { changeInstrument } from '@/lib/instrument/commands'
-import { getInstrument } from '@/lib/instrument/queries'
+import { changeInstrument } from '@/lib/instrument/commands/keep'
+import { getInstrument } from '@/lib/instrument/queries/list'
 import { changedInstrument, instrumentAddress } from '@/lib/instrument/schema'
 
 export const GET = read({

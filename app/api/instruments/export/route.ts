@@ -1,5 +1,5 @@
-import { instrumentSource } from '@/lib/instrument/queries'
-import { instrumentList } from '@/lib/instrument/rules'
+import { instrumentSource } from '@/lib/instrument/queries/list'
+import { instrumentList } from '@/lib/instrument/rules/list'
 import { download } from '@/lib/http/route'
 import { exportList } from '@/lib/list/commands'
 

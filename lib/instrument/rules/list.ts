@@ -1,5 +1,5 @@
 import { choice, describeList } from '@/lib/list/schema'
-import type { InstrumentRow } from './queries'
+import type { InstrumentRow } from '../queries/list'
 
 export const instrumentList = describeList<InstrumentRow>()({
   name: 'instruments',

@@ -4,10 +4,14 @@ import type { Db } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
 import { pageOf } from '@/lib/list/queries/page'
 import { likeTyped, naturally, type Source } from '@/lib/list/queries/source'
+import type { DailyCheck } from '../schema'
 import type { ListQuery } from '@/lib/list/schema'
 
 export type Spindle = { name: string; constant: number }
+export type CheckDetail = { sentence: string; read: number; expected: number; unit: string }
 export type CalibrationDetail = { sentence?: string; efficiencyPercent?: number; slopeMvPerPh?: number }
+
+const shownChecks = 60
 
 const columns = [
   'instrument.id',
@@ -37,9 +41,27 @@ export async function listInstruments(db: Db, _actor: Actor) {
           .as('newest'),
       (join) => join.onTrue(),
     )
+    .leftJoinLateral(
+      (eb) =>
+        eb
+          .selectFrom('instrumentCheck as own')
+          .innerJoin('person', 'person.id', 'own.recordedBy')
+          .select(['own.result as checkResult', 'own.checkedAt', 'person.initials as checkedBy'])
+          .select((detail) => detail.ref('own.detail').$castTo<CheckDetail | null>().as('checkDetail'))
+          .whereRef('own.instrumentId', '=', 'instrument.id')
+          .orderBy('own.checkedAt', 'desc')
+          .orderBy('own.id', 'desc')
+          .limit(1)
+          .as('checked'),
+      (join) => join.onTrue(),
+    )
     .select(columns)
-    .select((eb) => eb.ref('instrument.spindles').$castTo<Spindle[]>().as('spindles'))
+    .select((eb) => [
+      eb.ref('instrument.spindles').$castTo<Spindle[]>().as('spindles'),
+      eb.ref('instrument.dailyCheck').$castTo<DailyCheck | null>().as('dailyCheck'),
+    ])
     .select(['newest.dueOn', 'newest.result', 'newest.calibratedAt', 'newest.detail'])
+    .select(['checked.checkResult', 'checked.checkedAt', 'checked.checkedBy', 'checked.checkDetail'])
     .orderBy('instrument.isActive', 'desc')
     .orderBy('instrument.kind')
     .orderBy(sql`instrument.code collate natural_order`)
@@ -105,6 +127,17 @@ export async function getInstrument(db: Db, _actor: Actor, id: string) {
     .orderBy('calibration.calibratedAt', 'desc')
     .orderBy('calibration.id', 'desc')
     .execute()
-  return { ...instrument, calibrations }
+  const checks = await db
+    .selectFrom('instrumentCheck as own')
+    .innerJoin('person', 'person.id', 'own.recordedBy')
+    .leftJoin('lot', 'lot.id', 'own.lotId')
+    .select(['own.id', 'own.checkedAt', 'own.result', 'own.note', 'person.initials', 'lot.lot'])
+    .select((eb) => eb.ref('own.detail').$castTo<CheckDetail>().as('detail'))
+    .where('own.instrumentId', '=', id)
+    .orderBy('own.checkedAt', 'desc')
+    .orderBy('own.id', 'desc')
+    .limit(shownChecks)
+    .execute()
+  return { ...instrument, calibrations, checks }
 }
 export type InstrumentPage = Awaited<ReturnType<typeof getInstrument>>

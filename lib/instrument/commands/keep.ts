@@ -11,7 +11,7 @@ export async function createInstrument(trx: Trx, _actor: Actor, input: z.output<
   await refuseTakenCode(trx, input)
   await trx
     .insertInto('instrument')
-    .values({ ...input, spindles: JSON.stringify(input.spindles) })
+    .values({ ...input, ...asJson(input) })
     .execute()
   return { id: input.id }
 }
@@ -39,10 +39,14 @@ export async function changeInstrument(
   await refuseTakenCode(trx, { id, code: fields.code })
   await trx
     .updateTable('instrument')
-    .set({ ...fields, spindles: JSON.stringify(fields.spindles), version: version + 1 })
+    .set({ ...fields, ...asJson(fields), version: version + 1 })
     .where('id', '=', id)
     .execute()
   return { version: version + 1 }
+}
+
+function asJson({ spindles, dailyCheck }: { spindles: unknown; dailyCheck: unknown }) {
+  return { spindles: JSON.stringify(spindles), dailyCheck: dailyCheck ? JSON.stringify(dailyCheck) : null }
 }
 
 async function refuseTakenCode(trx: Trx, { id, code }: { id: string; code: string }) {
