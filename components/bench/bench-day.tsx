@@ -8,6 +8,7 @@ import { TinyJar } from '@/components/bench/tiny-jar'
 import { Tray } from '@/components/device/tray'
 import type { OutboxOnScreen } from '@/components/device/use-outbox'
 import { heatLine } from '@/components/marks/heat'
+import { StationActs } from '@/components/station/station-acts'
 import { StationLabel } from '@/components/ui/station-label'
 import type { Bench, BenchStation } from '@/lib/bench/queries/today'
 import { dayText } from '@/lib/report/rules'
@@ -162,6 +163,7 @@ function Station({ station, isOpen, kept, onPick, onOpen }: StationProps) {
               Out of use {periodText(station.downtime)}: {station.downtime.reason}
             </p>
           ) : null}
+          <StationActs station={station} />
           <ul className="flex flex-col gap-3">
             {[...open, ...station.jars.filter((j) => !open.includes(j))].map((jar) => (
               <JarRow key={jar.pullJarId} jar={jar} isKept={kept.has(jar.code)} onOpen={onOpen} />

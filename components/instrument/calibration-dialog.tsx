@@ -1,17 +1,22 @@
 'use client'
 
 import { useState } from 'react'
+import useSWR from 'swr'
 import { Button } from '@/components/ui/button'
 import { Dialog } from '@/components/ui/dialog'
 import { ErrorNote } from '@/components/ui/error-note'
 import { Field } from '@/components/ui/field'
 import { NumberField } from '@/components/ui/number-field'
-import { readTyped } from '@/lib/number/rules'
+import { Select } from '@/components/ui/select'
 import { toast } from '@/components/ui/toast'
 import { calibrationKeys } from '@/lib/calibration/schema'
 import { newId } from '@/lib/db/id'
-import { ClientError, send } from '@/lib/http/fetcher'
+import { ClientError, fetcher, send } from '@/lib/http/fetcher'
+import type { LotRow } from '@/lib/lot/queries'
+import { lotKeys } from '@/lib/lot/schema'
+import { readTyped } from '@/lib/number/rules'
 import { addDays } from '@/lib/study/rules/calendar'
+import { MeterCheck, pointOf, type MeterDraft } from './meter-check'
 
 type Props = {
   instrument: { id: string; code: string; kind: string }
@@ -22,18 +27,27 @@ type Props = {
 
 const holdsDays: Record<string, number> = { meter: 1, viscometer: 90, balance: 180 }
 
-/** A calibration as its numbers; the server judges them and says what they show. */
+/** A calibration as its numbers; the server judges them and says what they show, and what a bad one reaches back to. */
 export function CalibrationDialog({ instrument, today, onClose, onDone }: Props) {
   const [id] = useState(newId)
-  const [texts, setTexts] = useState<Record<string, string>>(() => startOf(instrument.kind))
+  const { data: lots = [] } = useSWR<LotRow[]>(lotKeys.list, fetcher)
+  const [texts, setTexts] = useState<Record<string, string>>({ lot: '' })
+  const [meter, setMeter] = useState<MeterDraft>({
+    temperature: '25',
+    buffers: [
+      { buffer: 'phthalate', ph: '', mV: '' },
+      { buffer: 'phosphate', ph: '', mV: '' },
+    ],
+  })
   const [dueOn, setDueOn] = useState(() => addDays(today, holdsDays[instrument.kind] ?? 30))
   const [note, setNote] = useState('')
   const [error, setError] = useState<unknown>(null)
   const [busy, setBusy] = useState(false)
   const fields = error instanceof ClientError ? error.fields : {}
+  const asks = error instanceof ClientError && error.code === 'confirm'
+  const fluids = lots.filter((lot) => lot.kind === 'check fluid' && !lot.isUsedUp)
   const part = (key: string, label: string, path: string, unit?: string) => (
     <NumberField
-      key={key}
       label={label}
       unit={unit}
       value={texts[key] ?? ''}
@@ -43,17 +57,17 @@ export function CalibrationDialog({ instrument, today, onClose, onDone }: Props)
     />
   )
 
-  async function save() {
+  async function save(isConfirmed: boolean) {
     setBusy(true)
     setError(null)
     try {
-      const check = checkOf(instrument.kind, texts)
       const made = await send<{ result: string; sentence: string }>(calibrationKeys.list, 'POST', {
         id,
         instrumentId: instrument.id,
         dueOn,
-        check,
+        check: checkOf(instrument.kind, texts, meter),
         note,
+        isConfirmed,
       })
       toast(`${instrument.code} is ${made.result}. ${made.sentence}`, { isAlarm: made.result === 'doubtful' })
       onDone()
@@ -71,49 +85,50 @@ export function CalibrationDialog({ instrument, today, onClose, onDone }: Props)
       onClose={onClose}
       title={`Calibrate ${instrument.code}`}
       sentence={sentences[instrument.kind]}
-      width={520}
+      width={600}
       acts={
         <>
           <Button onClick={onClose}>Leave it</Button>
-          <Button kind="primary" busy={busy} onClick={save}>
-            Log the calibration
+          <Button kind={asks ? 'danger-asked' : 'primary'} busy={busy} onClick={() => void save(asks)}>
+            {asks ? 'It is so: log it' : 'Log the calibration'}
           </Button>
         </>
       }
     >
-      <div className="flex flex-wrap items-start gap-3">
-        {instrument.kind === 'meter' ? (
-          <>
-            {[1, 2, 3].map((row) => (
-              <div key={row} className="flex w-full flex-wrap gap-3">
-                {part(`ph${row}`, `Buffer ${row}, pH`, `points.${row - 1}.bufferPh`)}
-                {part(`mv${row}`, 'shows', `points.${row - 1}.mV`, 'mV')}
-              </div>
-            ))}
-            {part('temperature', 'Buffers at', 'temperatureC', '°C')}
-          </>
-        ) : null}
-        {instrument.kind === 'viscometer' ? (
-          <>
-            <Field
-              label="Spindle"
-              value={texts['spindle'] ?? ''}
-              onText={(text) => setTexts((before) => ({ ...before, spindle: text }))}
-              error={fields['check.spindle']}
-              wrap="w-[150px]"
-            />
-            {part('rpm', 'Speed', 'rpm', 'rpm')}
-            {part('fluid', 'Check fluid', 'fluidMPas', 'mPa·s')}
-            {part('read', 'Reads', 'readMPas', 'mPa·s')}
-          </>
-        ) : null}
-        {instrument.kind === 'balance' ? (
-          <>
-            {part('weight', 'Weight', 'weightG', 'g')}
-            {part('read', 'Reads', 'readG', 'g')}
-          </>
-        ) : null}
-      </div>
+      {instrument.kind === 'meter' ? (
+        <MeterCheck draft={meter} lots={lots} today={today} fields={fields} onDraft={setMeter} />
+      ) : null}
+      {instrument.kind === 'viscometer' ? (
+        <div className="flex flex-wrap items-start gap-3">
+          <Field
+            label="Spindle"
+            value={texts['spindle'] ?? ''}
+            onText={(text) => setTexts((before) => ({ ...before, spindle: text }))}
+            error={fields['check.spindle']}
+            wrap="w-[150px]"
+          />
+          {part('rpm', 'Speed', 'rpm', 'rpm')}
+          <Select
+            label="Check fluid"
+            value={texts['lot'] ?? ''}
+            empty="by its value"
+            options={fluids.map((lot) => ({ value: lot.id, label: `${lot.name}, lot ${lot.lot}` }))}
+            onPick={(lot) => setTexts((before) => ({ ...before, lot }))}
+            error={fields['check.lotId']}
+            wrap="min-w-[200px] flex-1"
+          />
+          {texts['lot']
+            ? part('temperature', 'Fluid at', 'temperatureC', '°C')
+            : part('fluid', 'Its value', 'fluidMPas', 'mPa·s')}
+          {part('read', 'Reads', 'readMPas', 'mPa·s')}
+        </div>
+      ) : null}
+      {instrument.kind === 'balance' ? (
+        <div className="flex flex-wrap items-start gap-3">
+          {part('weight', 'Weight', 'weightG', 'g')}
+          {part('read', 'Reads', 'readG', 'g')}
+        </div>
+      ) : null}
       <Field
         type="date"
         label="Holds until"
@@ -129,24 +144,21 @@ export function CalibrationDialog({ instrument, today, onClose, onDone }: Props)
 }
 
 const sentences: Record<string, string> = {
-  meter: 'Two or three buffers, with the value on their own certificate at their temperature.',
+  meter:
+    'Two or three buffers; each has its value at the temperature from its table or its bottle’s certificate.',
   viscometer: 'A check fluid of known viscosity, within 2 % of its value.',
   balance: 'A weight of known mass, within 0.01 g.',
 }
 
-function startOf(kind: string): Record<string, string> {
-  return kind === 'meter' ? { ph1: '7.00', ph2: '4.01', ph3: '', temperature: '25' } : {}
-}
-
-function checkOf(kind: string, texts: Record<string, string>) {
+function checkOf(kind: string, texts: Record<string, string>, meter: MeterDraft) {
   const number = (key: string) => readTyped(texts[key] ?? '')
   if (kind === 'meter') {
     return {
       kind,
-      temperatureC: number('temperature'),
-      points: [1, 2, 3]
-        .filter((row) => (texts[`mv${row}`] ?? '').trim() !== '')
-        .map((row) => ({ bufferPh: number(`ph${row}`), mV: number(`mv${row}`) })),
+      temperatureC: readTyped(meter.temperature),
+      points: meter.buffers
+        .filter((one, index) => index < 2 || one.mV.trim() !== '')
+        .map((one) => pointOf(one, readTyped)),
     }
   }
   if (kind === 'viscometer') {
@@ -154,7 +166,9 @@ function checkOf(kind: string, texts: Record<string, string>) {
       kind,
       spindle: texts['spindle'] ?? '',
       rpm: number('rpm'),
-      fluidMPas: number('fluid'),
+      ...(texts['lot']
+        ? { lotId: texts['lot'], temperatureC: number('temperature') ?? undefined }
+        : { fluidMPas: number('fluid') ?? undefined }),
       readMPas: number('read'),
     }
   }

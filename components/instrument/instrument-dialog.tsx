@@ -10,6 +10,7 @@ import { NumberField } from '@/components/ui/number-field'
 import { readTyped } from '@/lib/number/rules'
 import { Select } from '@/components/ui/select'
 import { toast } from '@/components/ui/toast'
+import { checkOf, DailyCheckFields, draftOf, type CheckDraft } from './daily-check-fields'
 import { newId } from '@/lib/db/id'
 import { ClientError, send } from '@/lib/http/fetcher'
 import type { InstrumentPage } from '@/lib/instrument/queries/list'
@@ -28,6 +29,7 @@ export function InstrumentDialog({ instrument, onClose, onDone }: Props) {
   const [spindles, setSpindles] = useState(() =>
     (instrument?.spindles ?? []).map((one) => ({ name: one.name, constant: String(one.constant) })),
   )
+  const [daily, setDaily] = useState<CheckDraft>(() => draftOf(instrument?.dailyCheck ?? null))
   const [error, setError] = useState<unknown>(null)
   const [busy, setBusy] = useState(false)
   const fields = error instanceof ClientError ? error.fields : {}
@@ -45,6 +47,7 @@ export function InstrumentDialog({ instrument, onClose, onDone }: Props) {
               .filter((one) => one.name.trim() !== '')
               .map((one) => ({ name: one.name, constant: readTyped(one.constant) }))
           : [],
+      dailyCheck: checkOf(kind, daily),
     }
     try {
       if (instrument) {
@@ -95,7 +98,10 @@ export function InstrumentDialog({ instrument, onClose, onDone }: Props) {
             { value: 'viscometer', label: 'viscometer' },
             { value: 'balance', label: 'balance' },
           ]}
-          onPick={setKind}
+          onPick={(picked) => {
+            setKind(picked)
+            setDaily(null)
+          }}
           wrap="w-[150px]"
         />
       </div>
@@ -132,6 +138,7 @@ export function InstrumentDialog({ instrument, onClose, onDone }: Props) {
           </div>
         </div>
       ) : null}
+      <DailyCheckFields kind={kind} draft={daily} fields={fields} onDraft={setDaily} />
       {instrument ? (
         <Checkbox label="In use" checked={isActive} onChange={(event) => setIsActive(event.target.checked)} />
       ) : null}

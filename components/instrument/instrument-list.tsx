@@ -15,6 +15,8 @@ import type { ListQuery } from '@/lib/list/schema'
 import { isOverdue } from '@/lib/calibration/rules'
 import { spokenDay } from '@/lib/study/rules/calendar'
 import { capital, numberWord } from '@/lib/study/rules/words'
+import type { LotRow } from '@/lib/lot/queries'
+import { LotsPart } from './lots-part'
 import { CalibrationDialog } from './calibration-dialog'
 import { InstrumentDialog } from './instrument-dialog'
 
@@ -27,16 +29,19 @@ type Props = {
   today: string
   mayWrite: boolean
   mayCalibrate: boolean
+  lots: LotRow[]
 }
 
 /** Instruments with what their last calibration showed and until when it holds. */
 export function InstrumentList(props: Props) {
-  const { instruments, page, query, timeZone, today, mayWrite, mayCalibrate } = props
+  const { instruments, page, query, timeZone, today, mayWrite, mayCalibrate, lots } = props
   const router = useRouter()
   const [isAdding, setIsAdding] = useState(false)
   const [calibrated, setCalibrated] = useState<InstrumentRow | null>(null)
   const inUse = instruments.filter((one) => one.isActive)
-  const wanting = inUse.filter((one) => isOverdue(dueOf(one), today) || one.result === 'doubtful')
+  const wanting = inUse.filter(
+    (one) => isOverdue(dueOf(one), today) || one.result === 'doubtful' || one.checkResult === 'doubtful',
+  )
   const add = mayWrite ? (
     <Button kind="primary" onClick={() => setIsAdding(true)}>
       Add an instrument
@@ -67,7 +72,14 @@ export function InstrumentList(props: Props) {
             ? `Readings of ${wanting.map((one) => one.code).join(', ')} carry a doubt until it is done.`
             : undefined
         }
-        acts={instruments.length > 0 ? add : undefined}
+        acts={
+          instruments.length > 0 ? (
+            <>
+              {add}
+              <LinkButton href="/instruments/checks">Daily checks</LinkButton>
+            </>
+          ) : undefined
+        }
       />
       <div className="mt-5">
         <ListTools
@@ -122,6 +134,9 @@ export function InstrumentList(props: Props) {
             )
           }
         />
+      </div>
+      <div className="mt-8">
+        <LotsPart lots={lots} today={today} mayKeep={mayCalibrate} onDone={() => router.refresh()} />
       </div>
       {isAdding ? (
         <InstrumentDialog

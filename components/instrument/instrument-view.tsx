@@ -14,6 +14,7 @@ import type { InstrumentPage } from '@/lib/instrument/queries/list'
 import { dayIn, spokenDay } from '@/lib/study/rules/calendar'
 import { viscosityFactor } from '@/lib/science/viscosity'
 import { calibrationFacts, factorFacts } from './calibration-facts'
+import { ChecksPart } from './checks-part'
 import { CalibrationDialog } from './calibration-dialog'
 import { InstrumentDialog } from './instrument-dialog'
 
@@ -116,6 +117,10 @@ export function InstrumentView({ instrument, today, timeZone, mayWrite, mayCalib
             ]}
           />
         </Section>
+        <ChecksPart
+          checks={instrument.checks}
+          moment={(at) => `${spokenDay(dayIn(timeZone, at))}, ${clock(timeZone, at)}`}
+        />
       </div>
       {open === 'change' ? (
         <InstrumentDialog instrument={instrument} onClose={close} onDone={() => router.refresh()} />
@@ -146,10 +151,22 @@ function Showed({ row, timeZone }: { row: InstrumentPage['calibrations'][number]
   )
 }
 
+function clock(timeZone: string, at: string): string {
+  return new Intl.DateTimeFormat('en-GB', { timeZone, timeStyle: 'short' }).format(new Date(at))
+}
+
 function Headline({ instrument, today }: { instrument: InstrumentPage; today: string }) {
   const [newest] = instrument.calibrations
   if (!instrument.isActive) return <>{instrument.code} is out of use</>
   if (!newest) return <>{instrument.code} was never calibrated</>
+  const [check] = instrument.checks
+  if (check?.result === 'doubtful' && Date.parse(check.checkedAt) > Date.parse(newest.calibratedAt)) {
+    return (
+      <>
+        {instrument.code} <b>failed</b> its daily check
+      </>
+    )
+  }
   if (newest.result === 'doubtful') {
     return (
       <>

@@ -53,7 +53,16 @@ export function StationList({ stations, page, query, mayWrite, mayLog, timeZone 
           </>
         }
         sentence={finding.sentence ?? undefined}
-        acts={stations.length > 0 ? add : undefined}
+        acts={
+          stations.length > 0 ? (
+            <>
+              {add}
+              {stations.some((one) => one.isActive && one.kind === 'freeze-thaw') ? (
+                <LinkButton href="/cycles">Freeze-thaw cycles</LinkButton>
+              ) : null}
+            </>
+          ) : undefined
+        }
       />
       {stations.length === 0 ? (
         <Empty

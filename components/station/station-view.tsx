@@ -8,8 +8,9 @@ import { Empty } from '@/components/ui/empty'
 import { FigureDetails } from '@/components/ui/figure-details'
 import { Heading } from '@/components/ui/heading'
 import { Ledger } from '@/components/ui/ledger'
+import { LinkButton } from '@/components/ui/link-button'
 import { Section } from '@/components/ui/section'
-import type { stationRecord } from '@/lib/station/queries/record'
+import type { LoggerFileRow, stationRecord, StationLogRow } from '@/lib/station/queries/record'
 import type { Downtime, TouchedPull } from '@/lib/station/queries/downtimes'
 import type { MoveRow } from '@/lib/station/queries/moves'
 import type { StandingJar } from '@/lib/station/queries/places'
@@ -27,13 +28,17 @@ import { DowntimePart } from './downtime-part'
 import { MovesPart } from './moves-part'
 import { OccupancyPart } from './occupancy-part'
 import { ShelfRoom } from './shelf-room'
+import { LoggerDialog } from './logger-dialog'
+import { LoggerFiles } from './logger-files'
 import { TemperatureDialog } from './temperature-dialog'
 import { TemperaturePlot } from './temperature-plot'
 
-type Record = Awaited<ReturnType<typeof stationRecord>>
+/** The log thinned for drawing, and its newest entries. */
+type Record = Awaited<ReturnType<typeof stationRecord>> & { newest: StationLogRow[] }
 type Props = {
   station: StationPage
   record: Record
+  loggerFiles: LoggerFileRow[]
   /** What stands here, what is planned, and where jars could go. */
   room: {
     jars: StandingJar[]
@@ -52,9 +57,10 @@ type Props = {
 }
 
 /** One station: its temperature record, its excursions, and whose jars stand there. */
-export function StationView({ station, record, room, timeZone, mayWrite, mayLog, mayMove }: Props) {
+export function StationView(props: Props) {
+  const { station, record, loggerFiles, room, timeZone, mayWrite, mayLog, mayMove } = props
   const router = useRouter()
-  const [open, setOpen] = useState<'change' | 'log' | null>(null)
+  const [open, setOpen] = useState<'change' | 'log' | 'file' | null>(null)
   const { excursions } = record
   const refresh = () => router.refresh()
   const close = () => setOpen(null)
@@ -74,10 +80,14 @@ export function StationView({ station, record, room, timeZone, mayWrite, mayLog,
         acts={
           <>
             {mayLog ? (
-              <Button kind="primary" onClick={() => setOpen('log')}>
-                Log the temperature
-              </Button>
+              <>
+                <Button kind="primary" onClick={() => setOpen('log')}>
+                  Log the temperature
+                </Button>
+                <Button onClick={() => setOpen('file')}>Take a logger&apos;s file</Button>
+              </>
             ) : null}
+            {station.kind === 'freeze-thaw' ? <LinkButton href="/cycles">Cycles</LinkButton> : null}
             {mayWrite ? <Button onClick={() => setOpen('change')}>Change the station</Button> : null}
           </>
         }
@@ -166,11 +176,12 @@ export function StationView({ station, record, room, timeZone, mayWrite, mayLog,
             </ul>
           </Section>
         ) : null}
+        <LoggerFiles files={loggerFiles} moment={moment} />
         {record.log.length > 0 ? (
           <Section title="Log">
             <Ledger
               caption="The newest forty temperatures"
-              rows={record.log.toReversed().slice(0, 40)}
+              rows={record.newest}
               rowKey={(row) => row.id}
               columns={[
                 { key: 'at', title: 'when', cell: (row) => moment(row.measuredAt) },
@@ -190,6 +201,7 @@ export function StationView({ station, record, room, timeZone, mayWrite, mayLog,
       {open === 'change' ? (
         <StationDialog station={station} nextOrder={station.walkOrder} onClose={close} onDone={refresh} />
       ) : null}
+      {open === 'file' ? <LoggerDialog station={station} onClose={close} onDone={refresh} /> : null}
       {open === 'log' ? <TemperatureDialog station={station} onClose={close} onDone={refresh} /> : null}
     </>
   )

@@ -1,5 +1,6 @@
 'use client'
 
+import { thinned } from '@/lib/station/rules/thin'
 import { useWidth } from '@/components/charts/use-width'
 import { dayIn, spokenDay } from '@/lib/study/rules/calendar'
 
@@ -75,21 +76,6 @@ export function TemperaturePlot({ station, log, timeZone }: Props) {
       </svg>
     </div>
   )
-}
-
-function thinned(log: Entry[], steps: number): Entry[] {
-  if (log.length <= steps * 2) return log
-  const size = Math.ceil(log.length / steps)
-  const kept: Entry[] = []
-  for (let at = 0; at < log.length; at += size) {
-    const part = log.slice(at, at + size)
-    const low = part.reduce((a, b) => (b.temperatureC < a.temperatureC ? b : a))
-    const high = part.reduce((a, b) => (b.temperatureC > a.temperatureC ? b : a))
-    kept.push(
-      ...(low === high ? [low] : [low, high].toSorted((a, b) => a.measuredAt.localeCompare(b.measuredAt))),
-    )
-  }
-  return kept
 }
 
 function spoken(log: Entry[], station: Props['station']): string {

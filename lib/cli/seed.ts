@@ -8,6 +8,7 @@ import { openFilling, type Filling } from './seed/context'
 import { fillDays } from './seed/days'
 import { batchesOf, layGround, tell, tellFinished } from './seed/finished'
 import { markFilled } from './seed/people'
+import { tellMorning } from './seed/morning'
 import { fillPhotos } from './seed/photos'
 import { answerFlags } from './seed/flags'
 import { tellStations } from './seed/stations'
@@ -113,8 +114,23 @@ async function fill(open: Omit<Filling, 'people'>): Promise<void> {
     },
     say,
   )
+  const thawed = await tell(
+    ground,
+    {
+      title: 'Lotion L1, freeze-thaw',
+      formula: 'L1',
+      batches: await batchesOf(ground, 'L1', 1, 3000, 12),
+      protocol: protocols['freeze-thaw'],
+      startedDaysAgo: 9,
+      untilDaysAgo: 0,
+      isShared: false,
+    },
+    say,
+  )
   await amendStory(filling, apart.id, apart.code)
   await tellStations(filling, ground.places, second.code)
+  console.log('this morning')
+  await tellMorning(filling, ground.places, { running: second.id, overdue: thawed.id })
   console.log('photos')
   await fillPhotos(filling, apart.id)
   console.log('questions, flags and cases')

@@ -9,7 +9,7 @@ export const dailyCheck = z.discriminatedUnion('kind', [
     /** A standard buffer, whose value at the temperature comes from the table; else `bufferPh`. */
     buffer: z.enum(['phthalate', 'phosphate', 'borax']).nullable().default(null),
     bufferPh: z.number('Type the pH of the buffer.').min(0).max(14).nullable().default(null),
-    allowedPh: above('how far it may be off').max(1),
+    allowedPh: above('how far it may be off').max(1, 'More than 1 pH is no check.'),
   }),
   z.object({
     kind: z.literal('viscometer'),
@@ -26,6 +26,12 @@ export const dailyCheck = z.discriminatedUnion('kind', [
   }),
 ])
 export type DailyCheck = z.output<typeof dailyCheck>
+
+const hasBuffer = (fields: { dailyCheck: DailyCheck | null }) =>
+  fields.dailyCheck?.kind !== 'meter' ||
+  fields.dailyCheck.buffer !== null ||
+  fields.dailyCheck.bufferPh !== null
+const noBuffer = { path: ['dailyCheck', 'bufferPh'], message: 'Choose the buffer, or type its pH.' }
 
 const instrumentFields = {
   code: z.string().trim().min(1, 'Give the instrument a code.').max(20),
@@ -48,12 +54,16 @@ const sameKind = (fields: { kind: string; dailyCheck: { kind: string } | null })
   fields.dailyCheck === null || fields.dailyCheck.kind === fields.kind
 const otherKind = { path: ['dailyCheck'], message: 'The daily check is that of another kind of instrument.' }
 
-export const newInstrument = z.object({ id: z.uuid(), ...instrumentFields }).refine(sameKind, otherKind)
+export const newInstrument = z
+  .object({ id: z.uuid(), ...instrumentFields })
+  .refine(sameKind, otherKind)
+  .refine(hasBuffer, noBuffer)
 export type NewInstrument = z.input<typeof newInstrument>
 
 export const changedInstrument = z
   .object({ version: z.number().int().positive(), isActive: z.boolean(), ...instrumentFields })
   .refine(sameKind, otherKind)
+  .refine(hasBuffer, noBuffer)
 export type ChangedInstrument = z.input<typeof changedInstrument>
 
 /** What the instrument showed of its daily check. */

@@ -69,6 +69,8 @@ export const changedStation = z
 export type ChangedStation = z.input<typeof changedStation>
 
 export const loggedTemperatures = z.object({
+  /** Where a device says when: its clock may be off. */
+  deviceNow: z.iso.datetime({ offset: true }).optional(),
   readings: z
     .array(
       z.object({

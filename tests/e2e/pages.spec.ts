@@ -59,6 +59,8 @@ const visits: Visit[] = [
   { page: 'stations/[id]', who: 'mada', at: { from: '/stations', link: /lamp cabinet/ } },
   { page: 'instruments', who: 'hedda', at: '/instruments' },
   { page: 'instruments/[id]', who: 'hedda', at: { from: '/instruments', link: /^V1$/ } },
+  { page: 'instruments/checks', who: 'mada', at: '/instruments/checks', phone: true },
+  { page: 'cycles', who: 'mada', at: '/cycles', phone: true },
   { page: 'cases', who: 'rune', at: '/cases' },
   { page: 'cases/new', who: 'liv', at: '/cases/new?study=S-003' },
   { page: 'cases/[code]', who: 'rune', at: '/cases/C-002', phone: true },

@@ -5,6 +5,7 @@ import { page } from '@/lib/http/page'
 import { listInstrumentPage, listInstruments } from '@/lib/instrument/queries/list'
 import { instrumentList } from '@/lib/instrument/rules/list'
 import { getLab } from '@/lib/lab/queries'
+import { listLots } from '@/lib/lot/queries'
 import { dayIn } from '@/lib/study/rules/calendar'
 
 export const permission = 'instrument.read'
@@ -17,11 +18,13 @@ export default async function InstrumentsPage({ searchParams }: Props) {
   const instruments = await listInstruments(db, actor)
   const query = instrumentList.query.parse(await searchParams)
   const found = await listInstrumentPage(db, actor, query)
+  const lots = await listLots(db, actor)
   const lab = await getLab(db)
   return (
     <InstrumentList
       instruments={instruments}
       page={found}
+      lots={lots}
       query={query}
       timeZone={lab.timeZone}
       today={dayIn(lab.timeZone, now)}

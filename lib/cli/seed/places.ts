@@ -35,6 +35,19 @@ const stations: Kind[] = [
   { name: 'oven 3', temperatureC: 45, lowC: 43, highC: 47, caution: 'Hot glass: gloves and eye protection.' },
 ]
 
+const dailyChecks = {
+  meter: { kind: 'meter', buffer: 'phosphate', allowedPh: 0.05 },
+  viscometer: {
+    kind: 'viscometer',
+    spindle: 'disc 4',
+    rpm: 20,
+    temperatureC: 25,
+    fluidMPas: 5000,
+    allowedPercent: 2,
+  },
+  balance: { kind: 'balance', weightG: 50, allowedG: 0.01 },
+} as const
+
 export type Places = {
   stations: { id: string; name: string; temperatureC: number | null }[]
   instruments: { ph: string; viscometer: string; otherViscometer: string; balance: string }
@@ -71,7 +84,14 @@ export async function fillPlaces(filling: Filling): Promise<Places> {
       await createInstrument(
         trx,
         hedda,
-        newInstrument.parse({ id, code, kind, name, spindles: kind === 'viscometer' ? spindles : [] }),
+        newInstrument.parse({
+          id,
+          code,
+          kind,
+          name,
+          spindles: kind === 'viscometer' ? spindles : [],
+          dailyCheck: dailyChecks[kind],
+        }),
       )
       return id
     }

@@ -15,7 +15,13 @@ import { behaviours } from './truth'
 import { walkStudy, type StudyToWalk } from './walk'
 
 export type Protocols = Record<
-  'screen cream' | 'screen lotion' | 'half year' | 'half year stiff' | 'two years' | 'three years',
+  | 'screen cream'
+  | 'screen lotion'
+  | 'half year'
+  | 'half year stiff'
+  | 'two years'
+  | 'three years'
+  | 'freeze-thaw',
   { id: string; plan: ProtocolPlan }
 >
 
@@ -43,7 +49,7 @@ export async function fillProtocols(filling: Filling): Promise<Protocols> {
         timePoints: s.temperatureC === 40 ? [13, 26] : [...quarters, 156].filter((w) => w <= last),
       }))
   return {
-    'screen cream': await make('Prototype screen, cream', readyMadePlan('screen', 'cream')),
+    'screen cream': await make('Prototype screen, cream', withCycle(readyMadePlan('screen', 'cream'))),
     'screen lotion': await make('Prototype screen, lotion', readyMadePlan('screen', 'lotion')),
     'half year': await make('Half a year, cream', halfYear('cream')),
     'half year stiff': await make('Half a year, stiff cream', halfYear('stiff cream')),
@@ -58,6 +64,7 @@ export async function fillProtocols(filling: Filling): Promise<Protocols> {
       retains: 2,
       stations: longStations(156),
     }),
+    'freeze-thaw': await make('Freeze-thaw, lotion', withCycle(readyMadePlan('freeze-thaw', 'lotion'))),
   }
 }
 
@@ -195,6 +202,15 @@ async function logCycles(filling: Filling, studyId: string, startedDaysAgo: numb
       await logCycleStep(trx, mada, half('cold', 4, 2), now)
       await logCycleStep(trx, mada, half('warm', 2, 0), now)
     })
+  }
+}
+
+/** A day frozen and a day in the room, as the lab's freezer cycles. */
+function withCycle(plan: ProtocolPlan): ProtocolPlan {
+  const cycle = { coldC: -10, coldHours: 24, warmC: 25, warmHours: 24, isFrozenThrough: true }
+  return {
+    ...plan,
+    stations: plan.stations.map((s) => (s.kind === 'freeze-thaw' ? { ...s, cycle } : s)),
   }
 }
 

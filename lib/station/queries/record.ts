@@ -1,6 +1,8 @@
 import type { Db } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
-import { recordOf, type StationRecord } from '@/lib/station/rules/record'
+import { recordOf, type StationLimits, type StationRecord } from '@/lib/station/rules/record'
+
+type StationOfRecord = StationLimits & { name: string }
 
 /** The temperature log of a period with its mean kinetic temperature and excursions. */
 export async function stationRecord(
@@ -8,15 +10,15 @@ export async function stationRecord(
   stationId: string,
   from: string,
   to: string,
-): Promise<StationRecord & { log: StationLogRow[] }> {
+): Promise<StationRecord & { station: StationOfRecord; log: StationLogRow[] }> {
   const station = await db
     .selectFrom('station')
-    .select(['kind', 'temperatureC', 'lowC', 'highC'])
+    .select(['name', 'kind', 'temperatureC', 'lowC', 'highC'])
     .where('id', '=', stationId)
     .executeTakeFirst()
   if (!station) throw refuse.notFound()
   const log = await readLog(db, stationId, from, to)
-  return { ...recordOf(station, log), log }
+  return { ...recordOf(station, log), station, log }
 }
 
 async function readLog(db: Db, stationId: string, from: string, to: string) {
@@ -32,3 +34,24 @@ async function readLog(db: Db, stationId: string, from: string, to: string) {
     .execute()
 }
 export type StationLogRow = Awaited<ReturnType<typeof readLog>>[number]
+
+/** What loggers' files were taken for a station, the newest first. */
+export async function listLoggerFiles(db: Db, stationId: string) {
+  return db
+    .selectFrom('loggerFile as file')
+    .innerJoin('person', 'person.id', 'file.recordedBy')
+    .select([
+      'file.id',
+      'file.originalName',
+      'file.sha256',
+      'file.takenRows',
+      'file.knownRows',
+      'file.badRows',
+    ])
+    .select(['file.fromAt', 'file.toAt', 'file.recordedAt', 'person.initials'])
+    .where('file.stationId', '=', stationId)
+    .orderBy('file.recordedAt', 'desc')
+    .limit(20)
+    .execute()
+}
+export type LoggerFileRow = Awaited<ReturnType<typeof listLoggerFiles>>[number]

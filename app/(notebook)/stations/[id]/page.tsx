@@ -4,11 +4,12 @@ import { StationView } from '@/components/station/station-view'
 import { may } from '@/lib/auth/permissions'
 import { page } from '@/lib/http/page'
 import { getLab } from '@/lib/lab/queries'
-import { stationRecord } from '@/lib/station/queries/record'
+import { listLoggerFiles, stationRecord } from '@/lib/station/queries/record'
 import { listComingPulls, listDowntimes } from '@/lib/station/queries/downtimes'
 import { listMoves } from '@/lib/station/queries/moves'
 import { listLeavings, listSeriesPlaces, listStandingJars } from '@/lib/station/queries/places'
 import { getStation, listStations } from '@/lib/station/queries/stations'
+import { thinned } from '@/lib/station/rules/thin'
 import { dayIn } from '@/lib/study/rules/calendar'
 import { stationAddress } from '@/lib/station/schema'
 import { found } from '../../studies/found'
@@ -19,6 +20,8 @@ export const metadata: Metadata = { title: 'Station' }
 type Props = { params: Promise<{ id: string }> }
 
 const shownDays = 180
+/** More than a screen has columns. */
+const drawnSteps = 800
 
 export default async function StationPage({ params }: Props) {
   const { actor, db, now } = await page(permission)
@@ -26,7 +29,12 @@ export default async function StationPage({ params }: Props) {
   if (!address.success) notFound()
   const station = await found(getStation(db, actor, address.data.id))
   const from = new Date(Date.parse(now) - shownDays * 86_400_000).toISOString()
-  const record = await stationRecord(db, station.id, from, now)
+  const whole = await stationRecord(db, station.id, from, now)
+  const record = {
+    ...whole,
+    log: thinned(whole.log, drawnSteps),
+    newest: whole.log.toReversed().slice(0, 40),
+  }
   const lab = await getLab(db)
   const today = dayIn(lab.timeZone, now)
   const leavings = await listLeavings(db)
@@ -44,6 +52,7 @@ export default async function StationPage({ params }: Props) {
     <StationView
       station={station}
       record={record}
+      loggerFiles={await listLoggerFiles(db, station.id)}
       room={room}
       timeZone={lab.timeZone}
       mayWrite={may(actor, 'station.write')}

@@ -1,0 +1,118 @@
+'use client'
+
+import Link from 'next/link'
+import { useEffect, useState } from 'react'
+import useSWR from 'swr'
+import { Empty } from '@/components/ui/empty'
+import { Heading } from '@/components/ui/heading'
+import type { CycleBoard as Board } from '@/lib/cycle/queries/board'
+import { cycleKeys } from '@/lib/cycle/schema'
+import { fetcher } from '@/lib/http/fetcher'
+import { capital, numberWord } from '@/lib/study/rules/words'
+import { stateOf } from './cycle-words'
+import { PlaceRow } from './place-row'
+import { usePress } from './use-press'
+
+/** Jars in cycle, by study and freezer; its clock is the server's and goes on between two answers. */
+export function CycleBoard({ mayLog }: { mayLog: boolean }) {
+  const { data: board, mutate } = useSWR<Board>(cycleKeys.board, fetcher, { refreshInterval: 30_000 })
+  const presses = usePress(() => void mutate())
+  const now = useServerClock(board?.now)
+  if (!board || !now) return null
+  const places = board.places
+    .map((place) => ({ place, state: stateOf(place, now) }))
+    .toSorted((a, b) => rank(a.state) - rank(b.state))
+  return (
+    <div className="mx-auto max-w-[900px]">
+      <Heading
+        crumb={
+          <>
+            <Link href="/bench">Bench</Link>, <Link href="/stations">stations</Link>, freeze-thaw
+          </>
+        }
+        headline={<Headline states={places.map(({ state }) => state)} />}
+      />
+      {places.length === 0 ? (
+        <Empty
+          title="Freeze-thaw stations of running studies will stand here"
+          sentence="Each with its cycles, what runs and until when."
+        />
+      ) : (
+        <ul className="mt-6">
+          {places.map(({ place }) => (
+            <PlaceRow
+              key={place.id}
+              place={place}
+              now={now}
+              zone={board.zone}
+              mayLog={mayLog}
+              presses={presses}
+            />
+          ))}
+        </ul>
+      )}
+    </div>
+  )
+}
+
+type State = ReturnType<typeof stateOf>
+
+function Headline({ states }: { states: State[] }) {
+  const overdue = states.filter((state) => state.kind === 'running' && state.isOverdue).length
+  const running = states.filter((state) => state.kind === 'running').length
+  const waiting = states.filter((state) => state.kind === 'waiting').length
+  if (overdue > 0) {
+    return (
+      <>
+        <b className="text-alarm">
+          {capital(numberWord(overdue))} {overdue === 1 ? 'half is' : 'halves are'} overdue
+        </b>
+        {running > overdue ? <>, {numberWord(running - overdue)} more in cycle</> : null}
+      </>
+    )
+  }
+  if (running > 0) {
+    return (
+      <>
+        <b>
+          {capital(numberWord(running))} {running === 1 ? 'half runs' : 'halves run'}
+        </b>
+        {waiting > 0 ? <>, {numberWord(waiting)} to begin</> : <> in time</>}
+      </>
+    )
+  }
+  if (waiting > 0) {
+    return (
+      <>
+        <b>
+          {capital(numberWord(waiting))} {waiting === 1 ? 'half' : 'halves'}
+        </b>{' '}
+        to begin
+      </>
+    )
+  }
+  return (
+    <>
+      <b>Nothing</b> is in cycle
+    </>
+  )
+}
+
+function rank(state: State): number {
+  if (state.kind === 'running') return state.isOverdue ? 0 : state.isDue ? 1 : 2
+  return state.kind === 'waiting' ? 3 : 4
+}
+
+/** The server's time as it was answered, moved on by what has passed since on this device. */
+export function useServerClock(answered: string | undefined): string | null {
+  const [elapsed, setElapsed] = useState(0)
+  useEffect(() => {
+    const since = Date.now()
+    const tick = setInterval(() => setElapsed(Date.now() - since), 15_000)
+    return () => {
+      clearInterval(tick)
+      setElapsed(0)
+    }
+  }, [answered])
+  return answered ? new Date(Date.parse(answered) + elapsed).toISOString() : null
+}
