@@ -7,6 +7,7 @@ import { Empty } from '@/components/ui/empty'
 import { Heading } from '@/components/ui/heading'
 import type { CycleBoard as Board } from '@/lib/cycle/queries/board'
 import { cycleKeys } from '@/lib/cycle/schema'
+import { Section } from '@/components/ui/section'
 import { fetcher } from '@/lib/http/fetcher'
 import { capital, numberWord } from '@/lib/study/rules/words'
 import { stateOf } from './cycle-words'
@@ -22,6 +23,9 @@ export function CycleBoard({ mayLog }: { mayLog: boolean }) {
   const places = board.places
     .map((place) => ({ place, state: stateOf(place, now) }))
     .toSorted((a, b) => rank(a.state) - rank(b.state))
+  const isThrough = ({ place, state }: (typeof places)[number]) =>
+    state.kind === 'over' && !place.inspections.some((jar) => jar.isToRead)
+  const over = places.filter(isThrough)
   return (
     <div className="mx-auto max-w-[900px]">
       <Heading
@@ -39,19 +43,48 @@ export function CycleBoard({ mayLog }: { mayLog: boolean }) {
         />
       ) : (
         <ul className="mt-6">
-          {places.map(({ place }) => (
-            <PlaceRow
-              key={place.id}
-              place={place}
-              now={now}
-              zone={board.zone}
-              mayLog={mayLog}
-              presses={presses}
-            />
-          ))}
+          {places
+            .filter((one) => !isThrough(one))
+            .map(({ place }) => (
+              <PlaceRow
+                key={place.id}
+                place={place}
+                now={now}
+                zone={board.zone}
+                mayLog={mayLog}
+                presses={presses}
+              />
+            ))}
         </ul>
       )}
+      {over.length > 0 ? <Over places={over.map(({ place }) => place)} /> : null}
     </div>
+  )
+}
+
+/** What is through its cycles: one line each, with what is still to be looked at. */
+function Over({ places }: { places: Board['places'] }) {
+  return (
+    <Section title="Through their cycles" className="pb-6">
+      <ul className="text-17">
+        {places.map((place) => (
+          <li
+            key={place.id}
+            className="flex min-h-16 flex-wrap items-center justify-between gap-x-6 gap-y-1 border-b border-dashed border-hair"
+          >
+            <span>
+              <Link href={`/studies/${place.studyCode}`} className="font-mono underline underline-offset-4">
+                {place.studyCode}
+              </Link>{' '}
+              {place.studyTitle}
+            </span>
+            <span className="text-soft">
+              all {place.cycles} cycles at the {place.stationName}
+            </span>
+          </li>
+        ))}
+      </ul>
+    </Section>
   )
 }
 

@@ -6,7 +6,7 @@ import { Button } from '@/components/ui/button'
 import { ErrorNote } from '@/components/ui/error-note'
 import { StationLabel } from '@/components/ui/station-label'
 import type { CyclePlace } from '@/lib/cycle/queries/board'
-import { counted } from '@/lib/study/rules/words'
+import { capital, counted } from '@/lib/study/rules/words'
 import { CycleWave } from './cycle-wave'
 import { runningText, stateOf, whenText } from './cycle-words'
 import { EndDialog } from './end-dialog'
@@ -159,7 +159,7 @@ function Inspections({ place }: { place: CyclePlace }) {
   return (
     <div className="mt-3 flex flex-wrap items-center gap-3 text-18">
       <span>
-        <b>{counted(open.length, 'jar')} to look at</b> after {open[0]!.label}:
+        <b>{capital(counted(open.length, 'jar'))} to look at</b> after {open[0]!.label}:
       </span>
       {open.slice(0, 12).map((jar) => (
         <Link
