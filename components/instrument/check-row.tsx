@@ -79,10 +79,10 @@ export function CheckRow({ instrument, lots, today, onDone }: Props) {
                 label="Bottle"
                 density="bench"
                 value={lotId}
-                empty={check.kind === 'meter' ? 'by the table' : 'as set for the instrument'}
+                empty={check.kind === 'meter' ? 'by the table' : 'as set'}
                 options={bottles.map((one) => ({ value: one.id, label: `${one.name}, lot ${one.lot}` }))}
                 onPick={setLotId}
-                wrap="min-w-[220px] flex-1"
+                wrap="w-[200px]"
               />
             ) : null}
             <NumberField
@@ -92,7 +92,7 @@ export function CheckRow({ instrument, lots, today, onDone }: Props) {
               value={temperature}
               onText={setTemperature}
               error={fields['temperatureC']}
-              wrap="w-[150px]"
+              wrap="w-[124px]"
             />
           </>
         )}
@@ -103,7 +103,7 @@ export function CheckRow({ instrument, lots, today, onDone }: Props) {
           value={read}
           onText={setRead}
           error={fields['read']}
-          wrap="min-w-[220px] flex-1"
+          wrap="min-w-[200px] flex-1"
         />
         <Button
           density="bench"

@@ -1,4 +1,4 @@
-import { z } from '@/lib/http/zod'
+import * as z from '@/lib/http/zod'
 
 const lotFields = {
   kind: z.enum(['buffer', 'check fluid'], 'Choose buffer or check fluid.'),
