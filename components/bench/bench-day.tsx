@@ -8,7 +8,7 @@ import { TinyJar } from '@/components/bench/tiny-jar'
 import { Tray } from '@/components/device/tray'
 import type { OutboxOnScreen } from '@/components/device/use-outbox'
 import { heatLine } from '@/components/marks/heat'
-import { StationActs } from '@/components/station/station-acts'
+import { CycleAlarm, StationActs } from '@/components/station/station-acts'
 import { StationLabel } from '@/components/ui/station-label'
 import type { Bench, BenchStation } from '@/lib/bench/queries/today'
 import { dayText } from '@/lib/report/rules'
@@ -149,6 +149,7 @@ function Station({ station, isOpen, kept, onPick, onOpen }: StationProps) {
           >
             {/* Two ovens may keep the same temperature; open, the name stands below. */}
             {isOpen ? null : <span className="block font-430 text-soft">{station.name}</span>}
+            {station.kind === 'freeze-thaw' ? <CycleAlarm stationId={station.id} /> : null}
             {remark(station, open.length, leaning.length)}
           </span>
         </span>

@@ -1,7 +1,6 @@
 'use client'
 
 import Link from 'next/link'
-import { useEffect, useState } from 'react'
 import useSWR from 'swr'
 import { Empty } from '@/components/ui/empty'
 import { Heading } from '@/components/ui/heading'
@@ -13,6 +12,7 @@ import { capital, numberWord } from '@/lib/study/rules/words'
 import { stateOf } from './cycle-words'
 import { PlaceRow } from './place-row'
 import { usePress } from './use-press'
+import { useServerClock } from './use-server-clock'
 
 /** Jars in cycle, by study and freezer; its clock is the server's and goes on between two answers. */
 export function CycleBoard({ mayLog }: { mayLog: boolean }) {
@@ -134,18 +134,4 @@ function Headline({ states }: { states: State[] }) {
 function rank(state: State): number {
   if (state.kind === 'running') return state.isOverdue ? 0 : state.isDue ? 1 : 2
   return state.kind === 'waiting' ? 3 : 4
-}
-
-/** The server's time as it was answered, moved on by what has passed since on this device. */
-export function useServerClock(answered: string | undefined): string | null {
-  const [elapsed, setElapsed] = useState(0)
-  useEffect(() => {
-    const since = Date.now()
-    const tick = setInterval(() => setElapsed(Date.now() - since), 15_000)
-    return () => {
-      clearInterval(tick)
-      setElapsed(0)
-    }
-  }, [answered])
-  return answered ? new Date(Date.parse(answered) + elapsed).toISOString() : null
 }

@@ -5,6 +5,7 @@ import { useState } from 'react'
 import { Button } from '@/components/ui/button'
 
 const CycleRemark = dynamic(() => import('@/components/cycle/cycle-remark').then((m) => m.CycleRemark))
+export const CycleAlarm = dynamic(() => import('@/components/cycle/cycle-remark').then((m) => m.CycleAlarm))
 const TemperatureDialog = dynamic(() => import('./temperature-dialog').then((m) => m.TemperatureDialog))
 
 /** What is done at a station itself while one stands there: its temperature, and the freezer's cycles. */

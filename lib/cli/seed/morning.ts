@@ -122,10 +122,8 @@ async function takeHotWeekend(filling: Filling, places: Places): Promise<void> {
   }
 }
 
-type Step = [
-  Omit<Extract<CyclePressInput, { press: 'begin' | 'end' }>, 'id' | 'studyStationId'>,
-  hoursAgo: number,
-]
+type Told<P> = P extends { press: 'begin' | 'end' } ? Omit<P, 'id' | 'studyStationId'> : never
+type Step = [press: Told<CyclePressInput>, hoursAgo: number]
 
 async function cycle(filling: Filling, studyId: string, ...steps: Step[]): Promise<void> {
   const { mada } = filling.people
