@@ -175,11 +175,28 @@ export interface Client {
   version: Generated<number>
 }
 
+export interface CyclePress {
+  at: string
+  claimedAt: string | null
+  cycle: number
+  half: string
+  id: string
+  press: string
+  reason: Generated<string>
+  recordedAt: Generated<string>
+  recordedBy: string
+  studyStationId: string
+}
+
 export interface CycleStep {
+  beginPressId: string | null
   begunAt: string
+  claimedAt: string | null
+  coreC: Numeric | null
   cycle: number
   endedAt: string
   half: string
+  heldHours: Generated<Numeric>
   id: string
   isFrozenThrough: boolean | null
   note: Generated<string>
@@ -380,12 +397,26 @@ export interface Ingredient {
 export interface Instrument {
   code: string
   createdAt: Generated<string>
+  dailyCheck: unknown | null
   id: string
   isActive: Generated<boolean>
   kind: string
   name: string
   spindles: Generated<unknown>
   version: Generated<number>
+}
+
+export interface InstrumentCheck {
+  checkedAt: string
+  claimedAt: string | null
+  detail: unknown
+  id: string
+  instrumentId: string
+  lotId: string | null
+  note: Generated<string>
+  recordedAt: Generated<string>
+  recordedBy: string
+  result: string
 }
 
 export interface Jar {
@@ -441,6 +472,37 @@ export interface Lab {
   timeZone: string
   version: Generated<number>
   workingDays: Generated<number[]>
+}
+
+export interface LoggerFile {
+  badRows: number
+  bytes: number
+  fromAt: string
+  id: string
+  knownRows: number
+  originalName: Generated<string>
+  readAs: unknown
+  recordedAt: Generated<string>
+  recordedBy: string
+  sha256: string
+  stationId: string
+  takenRows: number
+  toAt: string
+}
+
+export interface Lot {
+  certificate: unknown
+  createdAt: Generated<string>
+  expiresOn: string
+  id: string
+  isUsedUp: Generated<boolean>
+  keepsDays: number | null
+  kind: string
+  lot: string
+  name: string
+  openedOn: string | null
+  recordedBy: string
+  version: Generated<number>
 }
 
 export interface OutsideResult {
@@ -598,6 +660,17 @@ export interface Reading {
   word: string | null
 }
 
+export interface ReadingDoubt {
+  calibrationId: string | null
+  id: string
+  instrumentCheckId: string | null
+  readingId: string
+  reason: string
+  recordedAt: Generated<string>
+  recordedBy: string
+  sentence: string
+}
+
 export interface Series {
   attribute: string
   batchId: string
@@ -710,6 +783,7 @@ export interface StationMove {
 
 export interface StationTemperature {
   id: string
+  loggerFileId: string | null
   measuredAt: string
   recordedAt: Generated<string>
   recordedBy: string
@@ -839,6 +913,7 @@ export interface DB {
   batchWeighing: BatchWeighing
   calibration: Calibration
   client: Client
+  cyclePress: CyclePress
   cycleStep: CycleStep
   dayReview: DayReview
   flag: Flag
@@ -855,10 +930,13 @@ export interface DB {
   idempotencyAnswer: IdempotencyAnswer
   ingredient: Ingredient
   instrument: Instrument
+  instrumentCheck: InstrumentCheck
   jar: Jar
   jarMishap: JarMishap
   jarMove: JarMove
   lab: Lab
+  loggerFile: LoggerFile
+  lot: Lot
   outsideResult: OutsideResult
   password: Password
   person: Person
@@ -870,6 +948,7 @@ export interface DB {
   pullJar: PullJar
   rateLimit: RateLimit
   reading: Reading
+  readingDoubt: ReadingDoubt
   series: Series
   session: Session
   shelfCase: ShelfCase
