@@ -6,7 +6,7 @@ import { useOutbox } from '@/components/device/use-outbox'
 import { Button, type Density } from '@/components/ui/button'
 import { Dialog } from '@/components/ui/dialog'
 import { ErrorNote } from '@/components/ui/error-note'
-import { NumberField } from '@/components/ui/number-field'
+import { Field } from '@/components/ui/field'
 import { NumberPad } from '@/components/ui/number-pad'
 import { toast } from '@/components/ui/toast'
 import { newId } from '@/lib/db/id'
@@ -93,14 +93,14 @@ export function TemperatureDialog({ station, density, onClose, onDone }: Props) 
         </>
       }
     >
-      <NumberField
+      <Field
         label={limits ? `Now, ${limitsText(limits)}` : 'Now'}
         unit="°C"
         density={density}
         value={text}
         onText={setText}
         inputMode={isBench ? 'none' : 'decimal'}
-        className={isBench ? 'text-64 font-650' : ''}
+        className={`text-right ${isBench ? 'text-64 font-650' : ''}`}
         error={side ? `This is ${side} its limits: the record will call it an excursion.` : undefined}
         autoFocus
       />

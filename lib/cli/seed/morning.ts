@@ -10,6 +10,7 @@ import { dailyChecked } from '@/lib/instrument/schema'
 import { keepLot } from '@/lib/lot/commands'
 import { newLot } from '@/lib/lot/schema'
 import { takeLoggerFile } from '@/lib/station/commands/take-logger-file'
+import { addDays } from '@/lib/study/rules/calendar'
 import { isoDay, type Places } from './places'
 import { daysAgo, type Filling } from './context'
 
@@ -32,7 +33,7 @@ export async function tellMorning(filling: Filling, places: Places, studies: InC
 
 async function fillLots(filling: Filling): Promise<void> {
   const { mada } = filling.people
-  const day = (ahead: number) => isoDay(daysAgo(filling, -ahead))
+  const day = (ahead: number) => addDays(isoDay(filling.now), ahead)
   const values = (...of: [number, number][]) => of.map(([temperatureC, value]) => ({ temperatureC, value }))
   const lots = [
     {
