@@ -1,13 +1,14 @@
 'use client'
 
 import { TakeInitial } from '@/components/batch/take-initial'
+import { Field } from '@/components/ui/field'
 import { NumberField } from '@/components/ui/number-field'
 import { RadioGroup } from '@/components/ui/radio-group'
 import { readDecimal } from '@/lib/number/rules'
 import { Section } from '@/components/ui/section'
 import { Select } from '@/components/ui/select'
 import type { PlannedAttribute, ProtocolPlan } from '@/lib/protocol/schema'
-import { attributeOf, attributeName } from '@/lib/reading/schema/attributes'
+import { attributeOf, attributeName, readByText, type AttributeKind } from '@/lib/reading/schema/attributes'
 import { mean } from '@/lib/science/mean'
 import { viscosity } from '@/lib/science/viscosity'
 import { shownWithUnit } from '@/lib/study/rules/words'
@@ -21,6 +22,14 @@ type Props = {
   fields: Record<string, string>
 }
 
+/** How kinds that are no single number are typed. */
+const howTyped: Partial<Record<AttributeKind, string>> = {
+  type: 'water outside, or oil outside',
+  colour: 'L*, a* and b*: 72.4 1.2 14.8',
+  droplets: '2.5 × 12; 3.5 × 30; 4.1',
+  centrifuge: 'none, trace, or the layer in mm',
+}
+
 /** The readings that every band is told from, per batch, as they are typed. */
 export function InitialFields({ offer, draft, plan, set, fields }: Props) {
   const attributes = initialAttributes(plan)
@@ -29,7 +38,7 @@ export function InitialFields({ offer, draft, plan, set, fields }: Props) {
   return (
     <Section
       title="Initial readings"
-      sentence="Bands are told from these. Separation, look, odour and mass start from nothing."
+      sentence="Bands are told from these. Separation, mass and what is said in words start from nothing."
     >
       <div className="grid gap-6">
         {attributes.map((planned) => (
@@ -61,16 +70,15 @@ export function InitialFields({ offer, draft, plan, set, fields }: Props) {
                 {Array.from({ length: planned.replicates }, (_, place) => {
                   const key = typedKey(batch.id, planned.attribute)
                   const texts = draft.typed[key] ?? []
+                  const { kind, unit } = attributeOf(planned.attribute, planned)
+                  const Typed = readByText.has(kind) ? Field : NumberField
                   return (
-                    <NumberField
+                    <Typed
                       key={place}
+                      placeholder={howTyped[kind]}
                       label={`${attributeName(planned.attribute)} of ${batch.code}${planned.replicates > 1 ? `, replicate ${place + 1}` : ''}`}
                       value={texts[place] ?? ''}
-                      unit={
-                        planned.viscosity && draft.isTorque
-                          ? '%'
-                          : attributeOf(planned.attribute, planned).unit
-                      }
+                      unit={planned.viscosity && draft.isTorque ? '%' : unit}
                       onText={(text) =>
                         set({
                           typed: {
@@ -82,7 +90,7 @@ export function InitialFields({ offer, draft, plan, set, fields }: Props) {
                         })
                       }
                       error={errorOf(fields, draft, plan, batch.id, planned.attribute)}
-                      wrap="w-[170px]"
+                      wrap={readByText.has(kind) ? 'w-[260px]' : 'w-[170px]'}
                     />
                   )
                 })}

@@ -1,8 +1,8 @@
 import { readDecimal } from '@/lib/number/rules'
-import type { ProtocolPlan } from '@/lib/protocol/schema'
+import type { PlannedAttribute, ProtocolPlan } from '@/lib/protocol/schema'
 import { jarsOfPlan, stationName } from '@/lib/protocol/rules/plan'
 import type { ProtocolRow } from '@/lib/protocol/queries'
-import { startsAtZero, attributeOf, toldFromInitial } from '@/lib/reading/schema/attributes'
+import { startsAtZero, attributeOf, toldFromInitial, readByText } from '@/lib/reading/schema/attributes'
 import { jarsFromGrams } from '@/lib/science/jar-grams'
 import type { ReleasedBatch } from '@/lib/study/queries/batches'
 import type { LabWorkload } from '@/lib/study/queries/workload'
@@ -244,6 +244,12 @@ export function bodyOf(id: string, offer: Offer, draft: Draft): StartStudy {
   }
 }
 
+/** Whether something was typed that may be a reading; what it is worth the server says. */
+function isRead({ attribute, own }: PlannedAttribute, text: string): boolean {
+  const { kind } = attributeOf(attribute, { own })
+  return readByText.has(kind) ? text.trim() !== '' : readDecimal(text) !== null
+}
+
 /** Why the study cannot be sent yet, in the order of the page; null where it can. */
 export function whyNot(offer: Offer, draft: Draft): string | undefined {
   const plan = planOf(offer, draft)
@@ -263,8 +269,9 @@ export function whyNot(offer: Offer, draft: Draft): string | undefined {
     return 'Say why it starts in part.'
   const missing = takenBatches(draft).some((batchId) =>
     initialAttributes(plan).some(
-      ({ attribute }) =>
-        !(draft.typed[typedKey(batchId, attribute)] ?? []).some((text) => readDecimal(text) !== null),
+      (planned) =>
+        !(planned.isInitialOnly && planned.tolerance.kind === 'range') &&
+        !(draft.typed[typedKey(batchId, planned.attribute)] ?? []).some((text) => isRead(planned, text)),
     ),
   )
   return missing ? 'An initial reading is missing.' : undefined

@@ -127,6 +127,19 @@ async function fill(open: Omit<Filling, 'people'>): Promise<void> {
     },
     say,
   )
+  await tell(
+    ground,
+    {
+      title: 'Lotion L1, texture and colour',
+      formula: 'L1',
+      batches: await batchesOf(ground, 'L1', 1, 2000, 48),
+      protocol: protocols['feel'],
+      startedDaysAgo: 44,
+      untilDaysAgo: 0,
+      isShared: false,
+    },
+    say,
+  )
   await amendStory(filling, apart.id, apart.code)
   await tellStations(filling, ground.places, second.code)
   console.log('this morning')

@@ -4,6 +4,7 @@ import { logCycleStep } from '@/lib/cycle/commands/log-half'
 import { cycleStep } from '@/lib/cycle/schema'
 import { approveVersion } from '@/lib/protocol/commands/approve-version'
 import { createProtocol } from '@/lib/protocol/commands/write-protocol'
+import { freshAttribute, freshOwn } from '@/lib/protocol/rules/fresh-attribute'
 import { readyMadePlan } from '@/lib/protocol/rules/ready-made'
 import { newProtocol, type ProtocolPlan } from '@/lib/protocol/schema'
 import { startStudy } from '@/lib/study/commands/start-study'
@@ -12,9 +13,11 @@ import { daysAgo, type Filling } from './context'
 import type { Batch } from './making'
 import type { Places } from './places'
 import { behaviours } from './truth'
+import { dropsTyped } from './senses'
 import { walkStudy, type StudyToWalk } from './walk'
 
 export type Protocols = Record<
+<<<<<<< HEAD
   | 'screen cream'
   | 'screen lotion'
   | 'half year'
@@ -22,6 +25,9 @@ export type Protocols = Record<
   | 'two years'
   | 'three years'
   | 'freeze-thaw',
+=======
+  'screen cream' | 'screen lotion' | 'half year' | 'half year stiff' | 'feel' | 'two years' | 'three years',
+>>>>>>> e49a1ac (The demo has a lotion's texture and colour: feel, emulsion type, colour, drops, density and an attribute of the protocol's own; ready-made protocols ask for the centrifuge once, before the start)
   { id: string; plan: ProtocolPlan }
 >
 
@@ -64,7 +70,11 @@ export async function fillProtocols(filling: Filling): Promise<Protocols> {
       retains: 2,
       stations: longStations(156),
     }),
+<<<<<<< HEAD
     'freeze-thaw': await make('Freeze-thaw, lotion', withCycle(readyMadePlan('freeze-thaw', 'lotion'))),
+=======
+    feel: await make('Texture and colour, lotion', texture()),
+>>>>>>> e49a1ac (The demo has a lotion's texture and colour: feel, emulsion type, colour, drops, density and an attribute of the protocol's own; ready-made protocols ask for the centrifuge once, before the start)
   }
 }
 
@@ -146,10 +156,49 @@ function initialOf(
         return { ...base, typed: ['0'], detail: { topMm: 0, bottomMm: 0, totalMm: plan.fillHeightMm } }
       case 'mass':
         return { ...base, typed: ['0'] }
+      case 'type':
+        return { ...base, typed: ['water outside'], detail: { typeMethod: 'dilution' as const } }
+      case 'colour':
+        return { ...base, typed: ['88.4 0.9 8.6'] }
+      case 'droplets':
+        return { ...base, typed: [dropsTyped(3.2, normal)] }
+      case 'density':
+        return { ...base, typed: ['0.978'], detail: { sampleTemperatureC: 25 } }
+      case 'centrifuge':
+        return { ...base, typed: ['none'] }
+      case 'own.Foam-height':
+        return { ...base, typed: ['142'] }
       default:
         return { ...base, typed: ['as the initial'], detail: { word: 'as the initial' } }
     }
   })
+}
+
+/** Six weeks on what a hand and an eye notice first, with one attribute that only this protocol has. */
+function texture(): ProtocolPlan {
+  const screen = readyMadePlan('screen', 'lotion')
+  const weeks = [1, 2, 4, 6]
+  const foam = freshOwn('own.Foam-height', 'number')
+  return {
+    ...screen,
+    endWeeks: 6,
+    stations: screen.stations
+      .filter(({ temperatureC }) => temperatureC === 25 || temperatureC === 45)
+      .map((station) => ({ ...station, timePoints: weeks })),
+    attributes: [
+      ...screen.attributes.filter(({ attribute }) => ['separation', 'look', 'ph'].includes(attribute)),
+      ...(['feel', 'type', 'colour', 'droplets', 'density'] as const).map(freshAttribute),
+      {
+        ...foam,
+        own: {
+          ...{ kind: 'number', unit: 'mm', decimals: 0, lower: 0, upper: 250, scatter: 4 },
+          ...{ isGradual: true, jar: 'measuring' },
+        },
+        method: '2 g in 50 mL of water, shaken ten times, after one minute',
+      },
+      { ...freshAttribute('centrifuge'), isInitialOnly: true },
+    ],
+  }
 }
 
 async function weighWatchJars(filling: Filling, studyId: string, plan: ProtocolPlan, at: Date) {

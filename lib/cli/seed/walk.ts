@@ -3,8 +3,9 @@ import { newId } from '@/lib/db/id'
 import { listOpenPullJars, type OpenPullJar } from './open-jars'
 import { logJar } from '@/lib/pull/commands/log-jar'
 import { jarToLog } from '@/lib/reading/schema/entry'
-import type { AttributeKey } from '@/lib/reading/schema/attributes'
+import { pulledFor } from '@/lib/protocol/rules/plan'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
+import { sensed } from './senses'
 import { daysAgo, type Filling } from './context'
 import type { Places } from './places'
 import { trueMassChange, truePh, trueSeparation, trueViscosity, type Behaviour } from './truth'
@@ -82,11 +83,10 @@ function entriesOf(
   const weeks = jar.timeWeeks
   const place = { temperatureC: jar.temperatureC, isFreezeThaw: jar.isFreezeThaw }
   const percent = trueSeparation(b, place, weeks)
-  const asked = plan.attributes.filter((a) =>
+  const asked =
     jar.asks === 'repeat'
-      ? a.attribute === jar.attribute
-      : watched.includes(a.attribute) === (jar.asks === 'watch'),
-  )
+      ? plan.attributes.filter((planned) => planned.attribute === jar.attribute)
+      : pulledFor(plan, jar.asks === 'watch' ? 'watch' : 'measuring')
   return asked.flatMap((planned) =>
     Array.from({ length: jar.asks === 'watch' ? 1 : planned.replicates }, (_, i) => {
       const base = { id: newId(), attribute: planned.attribute, replicate: i + 1 }
@@ -141,12 +141,12 @@ function entriesOf(
           const kept = planned.attribute === 'odour' ? 'as the initial' : word
           return { ...base, typed: kept, detail: { word: kept } }
         }
+        default:
+          return { ...base, ...sensed(planned, place, weeks, normal)! }
       }
     }),
   )
 }
-
-const watched: AttributeKey[] = ['separation', 'look', 'mass']
 
 function noteOf(study: StudyToWalk, jar: OpenPullJar): string {
   const percent = trueSeparation(study.behaviour, jar, jar.timeWeeks)

@@ -1,5 +1,7 @@
 import type { PlannedAttribute, PlannedStation, ProtocolPlan } from '@/lib/protocol/schema'
 
+import { freshAttribute } from './fresh-attribute'
+
 /**
  * Ready-made protocols: a purpose (when and where) on an emulsion (how it is measured). They are a start that
  * a lab edits, not a rule; temperatures and weeks are common practice, no standard fixes them.
@@ -154,6 +156,8 @@ function measurements(emulsion: Emulsion): PlannedAttribute[] {
       replicates: 1,
       method: 'against the jar kept at 5 °C',
     },
+    // What comes apart under a thousand times gravity is not worth twelve weeks of ovens [practice].
+    { ...freshAttribute('centrifuge'), isInitialOnly: true },
   ]
 }
 

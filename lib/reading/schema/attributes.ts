@@ -224,6 +224,9 @@ export function startsAtZero({ key, kind }: Pick<Attribute, 'key' | 'kind'>): bo
   return key === 'mass' || nothingYet.has(kind)
 }
 
+/** Kinds whose text is no single number, such as the three of a colour or the sizes of drops. */
+export const readByText: ReadonlySet<AttributeKind> = new Set(['type', 'colour', 'droplets', 'centrifuge'])
+
 /** Read as a difference from the batch's own initial, which is therefore needed whatever the tolerance. */
 export function toldFromInitial({ attribute }: { attribute: string }): boolean {
   return attribute === 'colour'

@@ -1,11 +1,6 @@
 import { refuse } from '@/lib/http/errors'
 import type { PlannedAttribute } from '@/lib/protocol/schema'
-import {
-  attributeOf,
-  attributeName,
-  type AttributeKind,
-  toldFromInitial,
-} from '@/lib/reading/schema/attributes'
+import { attributeOf, attributeName, toldFromInitial, readByText } from '@/lib/reading/schema/attributes'
 import { computed, ImpossibleEntry } from '@/lib/reading/rules/impossible-entry'
 import { valueOf as readingValue } from '@/lib/reading/rules/value'
 import { readTyped } from '@/lib/reading/schema/typed'
@@ -91,7 +86,7 @@ function rowOf(
 ): InitialRow {
   const attribute = attributeOf(planned.attribute, planned)
   const path = `initialReadings.${index}.typed.${place}`
-  if (readBySign.has(attribute.kind)) return ofItself(planned, reading, text, place, path)
+  if (readByText.has(attribute.kind)) return ofItself(planned, reading, text, place, path)
   const wordAt = attribute.words?.indexOf(text.toLowerCase()) ?? -1
   const typed = wordAt === -1 ? readTyped(text) : wordAt
   if (typed === null) {
@@ -121,9 +116,6 @@ function rowOf(
     measuredAt: reading.measuredAt,
   }
 }
-
-/** Kinds whose text is no single number; where their differences are told from, the initial is 0. */
-const readBySign: ReadonlySet<AttributeKind> = new Set(['type', 'colour', 'droplets', 'centrifuge'])
 
 function ofItself(
   planned: PlannedAttribute,
