@@ -4,7 +4,7 @@ import type { Db, Trx } from '@/lib/db/client'
 import { storage } from '@/lib/files/storage'
 import { refuse } from '@/lib/http/errors'
 import type { Download } from '@/lib/http/route'
-import { originalKey } from '@/lib/photo/rules'
+import { originalKey } from '@/lib/photo/rules/keys'
 import { getStudyHead } from '@/lib/study/queries/head'
 
 /** All that outside laboratories reported of a study, what was superseded included, in order of the reports' days. */
