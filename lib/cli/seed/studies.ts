@@ -17,17 +17,14 @@ import { dropsTyped } from './senses'
 import { walkStudy, type StudyToWalk } from './walk'
 
 export type Protocols = Record<
-<<<<<<< HEAD
   | 'screen cream'
   | 'screen lotion'
   | 'half year'
   | 'half year stiff'
   | 'two years'
   | 'three years'
-  | 'freeze-thaw',
-=======
-  'screen cream' | 'screen lotion' | 'half year' | 'half year stiff' | 'feel' | 'two years' | 'three years',
->>>>>>> e49a1ac (The demo has a lotion's texture and colour: feel, emulsion type, colour, drops, density and an attribute of the protocol's own; ready-made protocols ask for the centrifuge once, before the start)
+  | 'freeze-thaw'
+  | 'feel',
   { id: string; plan: ProtocolPlan }
 >
 
@@ -70,11 +67,8 @@ export async function fillProtocols(filling: Filling): Promise<Protocols> {
       retains: 2,
       stations: longStations(156),
     }),
-<<<<<<< HEAD
     'freeze-thaw': await make('Freeze-thaw, lotion', withCycle(readyMadePlan('freeze-thaw', 'lotion'))),
-=======
     feel: await make('Texture and colour, lotion', texture()),
->>>>>>> e49a1ac (The demo has a lotion's texture and colour: feel, emulsion type, colour, drops, density and an attribute of the protocol's own; ready-made protocols ask for the centrifuge once, before the start)
   }
 }
 
