@@ -2,6 +2,7 @@
 
 import { useState } from 'react'
 import { JarGlyph } from '@/components/marks/jar-glyph'
+import { ReadingPhoto } from '@/components/photo/reading-photo'
 import { Button } from '@/components/ui/button'
 import { Dialog } from '@/components/ui/dialog'
 import { ErrorNote } from '@/components/ui/error-note'
@@ -66,6 +67,7 @@ export function DonePanel({ jar, mayLog, onChange, onWalk, next, onOpen }: Props
                       {r.doubts.length > 0 && !isGone ? `; doubt: ${r.doubts[0]?.sentence}` : ''}
                     </span>
                   </span>
+                  {r.photoLines ? <ReadingPhoto lines={r.photoLines} of={`jar ${jar.code}`} /> : null}
                   {mayLog && !isGone ? (
                     <Button density="bench" kind="danger" onClick={() => setVoiding(r.id)}>
                       Void

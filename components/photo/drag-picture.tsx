@@ -16,7 +16,7 @@ type Props = {
   onMove: (line: Line, row: number) => void
 }
 
-const loupePx = 168
+const loupePx = 140
 /** CSS pixels for one pixel of the copy. */
 const zoom = 2.5
 

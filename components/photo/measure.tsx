@@ -71,7 +71,7 @@ export default function Measure({ jar, photo, onUse, onClose }: Props) {
 
   return (
     <Dialog isOpen onClose={onClose} title={`Measure on the photo: ${jar.name}`} density="bench" width={1120}>
-      <div className="grid gap-5 md:grid-cols-[minmax(0,1fr)_380px]">
+      <div className="grid gap-5 md:grid-cols-[minmax(0,1fr)_340px] lg:grid-cols-[minmax(0,1fr)_400px]">
         <DragPicture
           {...{ copy, lines, axisX, tiltDegrees, picked }}
           alt={`Jar ${jar.code} with the lines that are being set`}
@@ -124,6 +124,7 @@ export default function Measure({ jar, photo, onUse, onClose }: Props) {
             <Button
               density="bench"
               kind="primary"
+              {...(byHand || proposal?.lines ? {} : { why: 'Set at least one line first.' })}
               onClick={() =>
                 onUse({
                   ...{ photoId: photo.id, width: copy.width, height: copy.height },

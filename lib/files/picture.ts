@@ -1,7 +1,7 @@
 import path from 'node:path'
 import { Worker } from 'node:worker_threads'
 
-const longestMs = 30_000
+const longestMs = 60_000
 // From the project's folder and not from this module's address: the bundler moves modules, not this file.
 const workerFile = path.join(process.cwd(), 'lib', 'files', 'picture-worker.mjs')
 

@@ -9,9 +9,10 @@ import { GET as copy, POST as addCopy } from '@/app/api/photos/[id]/copy/route'
 import { GET as proposal } from '@/app/api/photos/[id]/proposal/route'
 import { GET as original } from '@/app/api/photos/[id]/original/route'
 import { GET as preview } from '@/app/api/photos/[id]/preview/route'
+import { POST as log } from '@/app/api/pulls/[id]/readings/route'
 import { newId } from '@/lib/db/id'
 import { sql } from 'kysely'
-import { askedJars, benchStudy, jarAt, type BenchStudy } from '../support/bench-study'
+import { askedJars, benchStudy, jarAt, layered, type AskedJar, type BenchStudy } from '../support/bench-study'
 import { call } from '../support/call'
 import { drawnPhoto } from '../support/drawn-photo'
 import { place, withCameraNotes } from '../support/camera-notes'
@@ -204,6 +205,51 @@ describe('the copy that is measured on', () => {
     expect((await sendCopy(id, await picture(900, 900))).status).toBe(422)
     expect((await sendCopy(id, withCameraNotes(await picture(2000, 1000), 1))).status).toBe(415)
     expect((await sendCopy(id, await picture(1000, 2000))).status).toBe(200)
+  })
+})
+
+describe('a reading measured on a photo', () => {
+  it('keeps its lines, computes percent from them, and takes no photo of another jar', async () => {
+    const jars = await askedJars(t.db, study.studyId)
+    const [jar, other] = [jarAt(jars, 25, 1, 'watch'), jarAt(jars, 45, 1, 'watch')]
+    const id = newId()
+    await send(await picture(60, 80), id)
+    const lines = { fillTop: 100, topEdge: 130, bottomEdge: 400, base: 400 }
+    const onPhoto = {
+      photoId: id,
+      width: 600,
+      height: 800,
+      lines,
+      axisX: 300,
+      tiltDegrees: 0,
+      proposal: null,
+    }
+    const bodyFor = (asked: AskedJar, photoId: string, topMm = 6) => {
+      const body = layered(study, asked, topMm, 0)
+      const [reading] = body.readings
+      const photoLines = { ...onPhoto, photoId }
+      return {
+        ...body,
+        leaveOut: ['mass', 'look'],
+        readings: [{ ...reading!, detail: { ...reading!.detail, photoLines } }],
+      }
+    }
+    const keep = (asked: AskedJar, body: unknown) =>
+      call(log, { cookie: technician.cookie, params: { id: asked.pullJarId }, body })
+    const refused = await keep(other, bodyFor(other, id))
+    expect(refused.status).toBe(422)
+    expect(refused.body.error.sentence).toMatch(/another jar/)
+    expect((await keep(jar, bodyFor(jar, id, 9))).body.error.sentence).toMatch(/do not say the same/)
+    const kept = await keep(jar, bodyFor(jar, id))
+    expect(kept.body.error).toBeUndefined()
+    const row = await t.db
+      .selectFrom('reading')
+      .select(['value', 'detail'])
+      .where('pullJarId', '=', jar.pullJarId)
+      .where('attribute', '=', 'separation')
+      .executeTakeFirstOrThrow()
+    expect(row.value).toBe(10)
+    expect(row.detail).toMatchObject({ photoLines: { photoId: id, lines } })
   })
 })
 

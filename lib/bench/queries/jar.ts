@@ -4,6 +4,7 @@ import type { Db } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
 import { doubtsOf } from '@/lib/reading/queries/doubts'
 import { readJarCode } from '@/lib/jar/rules'
+import type { PhotoLinesOfReading } from '@/lib/reading/schema/photo-lines'
 import { spokenDay } from '@/lib/study/rules/calendar'
 import { jarsToRead, type BenchJarRow } from './jars'
 import { getLabDay, type LabDay } from './lab-day'
@@ -85,6 +86,7 @@ async function listReadingsOf(db: Db, pullJarIds: string[]) {
     .select(['r.id', 'r.pullJarId', 'r.attribute', 'r.replicate', 'r.value', 'r.word', 'r.typed'])
     .select(['r.measuredAt', 'r.isVoid', 'r.supersedesId', 'r.reason', 'person.initials as by'])
     .select(doubtsOf('r').as('doubts'))
+    .select(sql<PhotoLinesOfReading | null>`r.detail -> 'photoLines'`.as('photoLines'))
     .where('r.pullJarId', 'in', pullJarIds)
     .orderBy('r.recordedAt')
     .orderBy('r.id')

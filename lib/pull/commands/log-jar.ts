@@ -1,6 +1,7 @@
 import type { Actor } from '@/lib/auth/actor'
 import type { Trx } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
+import { refusePhotosOfOthers } from '@/lib/photo/queries/of-jar'
 import { claimedInstant, paperInstant } from '@/lib/reading/rules/claimed-time'
 import type { JarToLog } from '@/lib/reading/schema/entry'
 import { lockStudyOfPullJar, recomputeSeries, type Recomputed } from '@/lib/series/commands'
@@ -50,6 +51,7 @@ export async function logJar(trx: Trx, actor: Actor, input: JarToLog): Promise<L
   refuseOver(jar)
   const onRecord = frame.readings.filter((row) => row.pullJarId === jar.id)
   const entries = readEntries(jar, frame, input.readings)
+  await refusePhotosOfOthers(trx, jar, input.readings)
   refuseNothing(input, entries, onRecord)
   const isRead = jar.state === 'done'
   const readTwice = entries.filter(({ entry }) => standingIn(jar, frame, entry.attribute, entry.replicate))

@@ -30,7 +30,7 @@ test('The story, technician: a watch jar is looked at, measured in layers, weigh
     await page.getByRole('button', { name: key === '.' ? 'Decimal point' : key, exact: true }).tap()
   await pick(page, /^Photo/)
   await page
-    .getByLabel('Take a photo')
+    .getByLabel('Photo files')
     .first()
     .setInputFiles(await photo())
   await expect(page.getByRole('img', { name: new RegExp(`^Jar ${code}, `) }).first()).toBeVisible()
