@@ -24,6 +24,8 @@ export type Draft = {
   /** Where the layers were measured on a photo; typed over, they are a ruler's again. */
   photoLines?: PhotoLinesOfReading
   begunAt: string
+  /** The field in hand, so that one comes back to it after signing in again. */
+  at?: string
 }
 
 export function emptyDraft(now: string): Draft {

@@ -34,7 +34,8 @@ export function useJarEntry({ jar, outbox, mayType, onChange, onDone }: Options)
   )
   const draftKey = `jar.${jar.pullJarId}`
   const [draft, setDraft] = useKept(draftKey, emptyDraft(''))
-  const [at, setAt] = useState<string>(slots[0]?.key ?? 'note')
+  const at = draft.at ?? slots[0]?.key ?? 'note'
+  const setAt = (key: string) => setDraft((before) => ({ ...before, at: key }))
   const [error, setError] = useState<unknown>(null)
   const [asked, setAsked] = useState<ClientError | null>(null)
   const [twice, setTwice] = useState<AlreadyRead | null>(null)

@@ -23,12 +23,14 @@ export function Tray({ outbox }: { outbox: OutboxOnScreen }) {
         : items.length > 0
           ? 'Sending'
           : 'All sent'
+  const count = countText(items.length, refused, isOnline ? null : asOf)
   return (
     <>
       <button
         type="button"
         data-screen-only
         onClick={() => setOpen(true)}
+        aria-label={`${head}. ${count}. Show what waits.`}
         className="flex min-h-[66px] items-center gap-4 rounded bg-ink px-4 text-left text-onink"
       >
         {items.length > 0 ? (
@@ -43,7 +45,7 @@ export function Tray({ outbox }: { outbox: OutboxOnScreen }) {
         ) : null}
         <span className="leading-tight" role="status">
           <b className="block text-18">{head}</b>
-          <span className="text-17">{countText(items.length, refused, isOnline ? null : asOf)}</span>
+          <span className="text-17">{count}</span>
         </span>
       </button>
       {isOpen ? <OutboxDialog outbox={outbox} onClose={() => setOpen(false)} /> : null}

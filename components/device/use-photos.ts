@@ -1,6 +1,8 @@
 'use client'
 
 import { useCallback, useMemo } from 'react'
+import { sentenceOf } from '@/components/ui/error-note'
+import { toast } from '@/components/ui/toast'
 import { newId } from '@/lib/db/id'
 import type { About, OutboxItem } from './outbox-item'
 import { useOutbox } from './use-outbox'
@@ -49,11 +51,17 @@ export function usePhotos({ url, fields, about, onSent }: Where) {
     async (file: Blob, more: Record<string, string> = {}) => {
       const id = newId()
       const claimedAt = new Date().toISOString()
-      return send<{ id: string }>({
-        ...{ id, url, file },
-        body: { ...fields, ...more, id, claimedAt, deviceNow: claimedAt },
-        about: { ...about, kind: 'photo' },
-      })
+      try {
+        return await send<{ id: string }>({
+          ...{ id, url, file },
+          body: { ...fields, ...more, id, claimedAt, deviceNow: claimedAt },
+          about: { ...about, kind: 'photo' },
+        })
+      } catch (thrown) {
+        // The device has no room for it and the server was not reached: nobody has the photo.
+        toast(`${about.label} was not kept. ${sentenceOf(thrown).sentence}`, { isAlarm: true })
+        return null
+      }
     },
     [send, url, fields, about],
   )

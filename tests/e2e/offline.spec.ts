@@ -90,11 +90,20 @@ test('A04, A12: what was typed outlives the session, and waits unseen while anot
   const { code } = study.jars[most]!
   await openAs(page, 'jos', `/bench/${code}`)
   await page.getByRole('button', { name: 'Water below: 0.1 mm more' }).click()
-  const below = page.getByRole('tab', { name: /0\.1/ }).first()
-  await expect(below).toBeVisible()
+  await page.getByRole('tab', { name: /^Note/ }).click()
+  await page.getByLabel('Note', { exact: true }).fill('a hair on the lid')
 
-  // The session ends while the jar is open.
+  // The session ends; whoever opens the jar again signs in first and is where he was.
   watch.expectRefusal(/\/api\//, 401)
+  await context.clearCookies()
+  await page.reload()
+  await expect(page).toHaveURL(/\/sign-in\?to=/)
+  await page.getByRole('button', { name: 'Jos Okarin' }).click()
+  await expect(page).toHaveURL(new RegExp(`/bench/${code}$`))
+  await expect(page.getByLabel('Note', { exact: true })).toHaveValue('a hair on the lid')
+  await expect(page.getByRole('button', { name: /^Water below/ }).first()).toContainText('0.1')
+
+  // It ends once more while the jar is being kept.
   const cookies = await context.cookies()
   await context.clearCookies()
   await page.getByRole('button', { name: /^Keep/ }).click()
@@ -107,7 +116,8 @@ test('A04, A12: what was typed outlives the session, and waits unseen while anot
   await expect(page.getByRole('button', { name: /kept on this tablet/ })).toHaveCount(0)
   await page.goto(`/bench/${code}`)
   await expect(page.getByRole('button', { name: 'Water below: 0.1 mm more' })).toBeVisible()
-  await expect(page.getByRole('tab', { name: /0\.1/ })).toHaveCount(0)
+  await page.getByRole('tab', { name: /^Note/ }).click()
+  await expect(page.getByLabel('Note', { exact: true })).toHaveValue('')
 
   await context.clearCookies()
   await context.addCookies(cookies)
