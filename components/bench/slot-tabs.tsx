@@ -81,8 +81,8 @@ function Tab({ label, text, isHere, mark, onPick }: TabProps) {
       onClick={onPick}
       className={
         isHere
-          ? 'min-h-[74px] min-w-[116px] flex-1 border-t-[5px] border-ink bg-typed px-3 pb-2 text-left'
-          : 'mb-2.5 min-h-16 min-w-[116px] flex-1 rounded border-2 border-rule bg-paper px-3 py-1 text-left'
+          ? 'min-h-[74px] min-w-[116px] shrink-0 grow border-t-[5px] border-ink bg-typed px-3 pb-2 text-left'
+          : 'mb-2.5 min-h-16 min-w-[116px] shrink-0 grow rounded border-2 border-rule bg-paper px-3 py-1 text-left'
       }
     >
       <span className="flex items-center justify-between gap-2">
