@@ -26,7 +26,7 @@ const others = [
   '<!doctype',
   '<?php',
   'GIF89a',
-  '\u007fELF',
+  ,
 ]
 
 function holdsOther(bytes: Uint8Array): boolean {
