@@ -26,7 +26,6 @@ const others = [
   '<!doctype',
   '<?php',
   'GIF89a',
-  ,
 ]
 
 function holdsOther(bytes: Uint8Array): boolean {
