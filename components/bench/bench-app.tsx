@@ -20,7 +20,7 @@ export function BenchApp({ person }: { person: BenchPerson }) {
 
   if (!bench) return null
   return code === null ? (
-    <BenchDay bench={bench} outbox={outbox} onOpen={openJar} />
+    <BenchDay bench={bench} person={person} outbox={outbox} onOpen={openJar} onChange={refresh} />
   ) : (
     <JarScreen
       key={code}

@@ -1,6 +1,7 @@
 'use client'
 
 import { useState } from 'react'
+import { EarlyAct, MissedFollows } from '@/components/bench/missed-follows'
 import { JarGlyph } from '@/components/marks/jar-glyph'
 import { ReadingPhoto } from '@/components/photo/reading-photo'
 import { Button } from '@/components/ui/button'
@@ -78,7 +79,11 @@ export function DonePanel({ jar, mayLog, onChange, onWalk, next, onOpen }: Props
             })}
         </ul>
       ) : null}
+      {mayLog && jar.state === 'missed' && jar.isStudyRunning ? (
+        <MissedFollows jar={jar} onOpen={onOpen} onWalk={onWalk} />
+      ) : null}
       <div className="flex flex-wrap gap-3">
+        {mayLog && jar.isEarly && jar.isStudyRunning ? <EarlyAct jar={jar} onChange={onChange} /> : null}
         {next ? (
           <Button density="bench" kind="primary" onClick={() => onOpen(next.code)}>
             Open {next.name}

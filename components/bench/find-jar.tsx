@@ -1,13 +1,12 @@
 'use client'
 
 import { lazy, Suspense, useState, type FormEvent } from 'react'
+import { useCalledJar } from '@/components/bench/use-called-jar'
 import { Button } from '@/components/ui/button'
 import { Dialog } from '@/components/ui/dialog'
 import { Field } from '@/components/ui/field'
 import type { Bench } from '@/lib/bench/queries/today'
-import { benchKeys } from '@/lib/bench/schema'
-import { ClientError, fetcher } from '@/lib/http/fetcher'
-import { readJarCode } from '@/lib/jar/rules'
+import { readJarCode } from '@/lib/jar/rules/code'
 
 /** Camera and decoder come only to those who scan. */
 const LabelCamera = lazy(() => import('@/components/bench/label-camera'))
@@ -23,30 +22,7 @@ type Props = {
 /** A label is scanned with the camera or a reader that types, or its code is typed. A jar not asked for says so. */
 export function FindJar({ bench, isScanning, onOpen, onClose }: Props) {
   const [text, setText] = useState('')
-  const [error, setError] = useState<string | undefined>()
-  const [isBusy, setBusy] = useState(false)
-
-  async function find(given: string) {
-    const code = readJarCode(given)
-    if (!code) {
-      setError('That is no jar’s code: five signs, the last one checks the others. Read the label again.')
-      return
-    }
-    if (bench.stations.some((s) => s.jars.some((j) => j.code === code))) return onOpen(code)
-    setBusy(true)
-    try {
-      await fetcher(benchKeys.jar(code))
-      onOpen(code)
-    } catch (refused) {
-      setError(
-        refused instanceof ClientError && refused.status !== 0
-          ? refused.sentence
-          : `Jar ${code} is not on today’s walk, and without network nothing more is known of it.`,
-      )
-    } finally {
-      setBusy(false)
-    }
-  }
+  const { call, error, isBusy, forget } = useCalledJar(bench, onOpen)
 
   return (
     <Dialog isOpen onClose={onClose} title={isScanning ? 'Scan a label' : 'Which jar'} density="bench">
@@ -55,8 +31,8 @@ export function FindJar({ bench, isScanning, onOpen, onClose }: Props) {
           <LabelCamera
             onRead={(read) => {
               setText(readJarCode(read) ?? read.slice(0, 40))
-              setError(undefined)
-              if (!isBusy) void find(read)
+              forget()
+              if (!isBusy) void call(read)
             }}
           />
         </Suspense>
@@ -64,7 +40,7 @@ export function FindJar({ bench, isScanning, onOpen, onClose }: Props) {
       <form
         onSubmit={(event: FormEvent) => {
           event.preventDefault()
-          void find(text)
+          void call(text)
         }}
         className="flex flex-col gap-4"
       >
@@ -74,7 +50,7 @@ export function FindJar({ bench, isScanning, onOpen, onClose }: Props) {
           value={text}
           onText={(typed) => {
             setText(typed)
-            setError(undefined)
+            forget()
           }}
           error={error}
           hint="A label reader types it and presses Enter by itself."

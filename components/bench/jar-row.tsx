@@ -9,10 +9,13 @@ export function JarRow({
   jar,
   isKept,
   onOpen,
+  now,
 }: {
   jar: BenchJar
   isKept: boolean
   onOpen: (code: string) => void
+  /** The server's time. */
+  now: number
 }) {
   const isOpen = !isKept && (jar.state === 'due' || jar.state === 'resting')
   const place = jar.shelf === null ? '' : `shelf ${jar.shelf}, place ${jar.place}`
@@ -47,14 +50,19 @@ export function JarRow({
             <span
               className={jar.isOverdue ? 'font-650 text-alarm' : jar.isLastDay ? 'font-700' : 'text-soft'}
             >
-              {windowText(jar, isKept)}
+              {windowText(jar, isKept, now)}
             </span>
           </span>
+          {jar.standsInFor ? (
+            <span className="block font-650">takes the place of {jar.standsInFor}</span>
+          ) : null}
           {jar.standsAs ? <span className="block font-650">{jar.standsAs}</span> : null}
           <span className="block truncate text-soft">
-            {jar.openedBy && isOpen
-              ? `open: ${jar.openedBy.initials}`
-              : [asks[jar.asks], place].filter(Boolean).join(', ')}
+            {isOpen && (jar.openedBy || jar.read.length > 0)
+              ? openText(jar)
+              : jar.state === 'missed'
+                ? [jar.missedReason, jar.mishaps.at(-1)?.by].filter(Boolean).join(', ')
+                : [asks[jar.asks], place].filter(Boolean).join(', ')}
           </span>
         </span>
         {isOpen ? <Chevron /> : null}
@@ -63,15 +71,30 @@ export function JarRow({
   )
 }
 
-function windowText(jar: BenchJar, isKept: boolean): string {
+/** "open: MA, pH and mass are in". */
+function openText(jar: BenchJar): string {
+  const inside = jar.fields.filter((field) => jar.read.includes(field.attribute)).map((field) => field.label)
+  const what = inside.length === 0 ? '' : `${inside.join(', ')} ${inside.length === 1 ? 'is' : 'are'} in`
+  return `open: ${[jar.openedBy?.initials, what].filter(Boolean).join(', ')}`
+}
+
+function windowText(jar: BenchJar, isKept: boolean, now: number): string {
   if (isKept) return 'kept on this tablet'
   if (jar.state === 'missed') return 'not read'
   if (jar.state === 'done') return `read${jar.closedBy ? ` by ${jar.closedBy.initials}` : ''}`
-  if (jar.isReady) return 'rested, ready'
-  if (jar.state === 'resting' && jar.restUntil)
-    return `rests until ${new Date(jar.restUntil).toLocaleTimeString('en-GB', { hour: '2-digit', minute: '2-digit' })}`
+  if (jar.state === 'resting') return restText(jar, now)
   if (jar.isOverdue) return `was due by ${shortDay(jar.windowTo)}`
   return jar.isLastDay ? 'today only' : `by ${shortDay(jar.windowTo)}`
+}
+
+/** Counts down while it rests; whoever comes early is told when to come back. */
+export function restText(jar: BenchJar, now: number): string {
+  const until = jar.restUntil === null ? now : Date.parse(jar.restUntil)
+  if (until <= now) return 'rested, ready'
+  const minutes = Math.ceil((until - now) / 60_000)
+  const rest = minutes < 60 ? `${minutes} min` : `${Math.floor(minutes / 60)} h ${minutes % 60} min`
+  const at = new Date(until).toLocaleTimeString('en-GB', { hour: '2-digit', minute: '2-digit' })
+  return `rests ${rest} more, until ${at}`
 }
 
 function Chevron() {

@@ -1,47 +1,94 @@
 'use client'
 
 import { useState } from 'react'
+import { FollowsList } from '@/components/bench/follows-list'
+import { useOutbox } from '@/components/device/use-outbox'
 import { Button } from '@/components/ui/button'
-import { Checkbox } from '@/components/ui/checkbox'
 import { Dialog } from '@/components/ui/dialog'
 import { ErrorNote } from '@/components/ui/error-note'
 import { Field } from '@/components/ui/field'
-import type { BenchJarPage } from '@/lib/bench/queries/jar'
-import { send } from '@/lib/http/fetcher'
-import { pullKeys } from '@/lib/pull/schema'
+import type { BenchJar } from '@/lib/bench/queries/bench-jar'
+import { newId } from '@/lib/db/id'
+import { jarKeys, type MishapKind, type NotedMishap } from '@/lib/jar/schema'
 
-const reasons = ['not in its place', 'broken', 'oven could not be opened', 'ran out of time']
+const causes: { kind: MishapKind; says: string }[] = [
+  { kind: 'missed', says: 'oven could not be opened' },
+  { kind: 'missed', says: 'ran out of time' },
+  { kind: 'broken', says: 'broken' },
+  { kind: 'lost', says: 'not in its place' },
+  { kind: 'wrong jar', says: 'opened by mistake' },
+]
 
-/** A jar that cannot be read is an entry too, with its reason. */
-export function MissDialog({
-  jar,
-  onClose,
-  onDone,
-}: {
-  jar: BenchJarPage
+const whatItMeans: Record<MishapKind, string> = {
+  missed: 'It goes back to its place and is asked for at its next pull.',
+  broken: 'It is gone: nothing more is asked of it.',
+  lost: 'It counts as lost: nothing more is asked of it.',
+  'wrong jar': 'It is spent by that, whatever it was kept for: nothing more is asked of it.',
+  'pulled early':
+    'Its readings stand at the time they are really taken, which is what the trend is computed from.',
+}
+
+type Props = {
+  jar: Pick<BenchJar, 'name' | 'code' | 'pullJarId' | 'version'>
+  /** Before its window: the one thing to note is that it is pulled early. */
+  isEarly?: boolean
   onClose: () => void
-  onDone: () => void
-}) {
+  /** With the code of the jar that takes its place, where one does. */
+  onDone: (substitute?: string) => void
+}
+
+/** A jar that is not read, or not when it should be, is an entry too: what happened, why, and what follows. */
+export function MissDialog({ jar, isEarly = false, onClose, onDone }: Props) {
+  const { send } = useOutbox()
+  const [kind, setKind] = useState<MishapKind | null>(isEarly ? 'pulled early' : null)
   const [reason, setReason] = useState('')
-  const [isLost, setLost] = useState(false)
+  const [noted, setNoted] = useState<NotedMishap | null>(null)
   const [error, setError] = useState<unknown>(null)
   const [isBusy, setBusy] = useState(false)
-  async function miss() {
+
+  async function note() {
     setBusy(true)
     setError(null)
+    const now = new Date().toISOString()
     try {
-      await send(pullKeys.miss(jar.pullJarId), 'POST', { version: jar.version, reason, isJarLost: isLost })
-      onDone()
+      const outcome = await send<NotedMishap>({
+        url: jarKeys.mishaps(jar.code),
+        body: {
+          ...{ id: newId(), kind, reason, claimedAt: now, deviceNow: now },
+          pull: { pullJarId: jar.pullJarId, version: jar.version },
+        },
+        about: {
+          ...{ kind: 'missed', label: `Jar ${jar.name}`, code: jar.code, pullJarId: jar.pullJarId },
+          ...{ what: `${kind}: ${reason}`, href: `/bench/${jar.code}` },
+        },
+      })
+      if (outcome.how === 'sent' && outcome.answer.follows) setNoted(outcome.answer)
+      else onDone()
     } catch (refused) {
       setError(refused)
+    } finally {
       setBusy(false)
     }
+  }
+
+  if (noted?.follows) {
+    return (
+      <Dialog isOpen onClose={() => onDone()} title={`${jar.name} is noted as not read`} density="bench">
+        <FollowsList
+          pullJarId={jar.pullJarId}
+          follows={noted.follows}
+          onTaken={(code) => onDone(code)}
+          onNone={() => onDone()}
+        />
+      </Dialog>
+    )
   }
   return (
     <Dialog
       isOpen
       onClose={onClose}
-      title={`Why is ${jar.name} not read?`}
+      title={isEarly ? `Why is ${jar.name} pulled early?` : `Why is ${jar.name} not read?`}
+      sentence={kind ? whatItMeans[kind] : undefined}
       density="bench"
       acts={
         <>
@@ -50,36 +97,44 @@ export function MissDialog({
           </Button>
           <Button
             density="bench"
-            kind="danger-asked"
+            kind={isEarly ? 'primary' : 'danger-asked'}
             busy={isBusy}
-            why={reason.trim() === '' ? 'Say why first.' : undefined}
-            onClick={miss}
+            why={kind === null || reason.trim() === '' ? 'Say why first.' : undefined}
+            onClick={note}
           >
-            Note it as not read
+            {isEarly ? 'Note it and read it' : 'Note it as not read'}
           </Button>
         </>
       }
     >
-      <div className="flex flex-wrap gap-3">
-        {reasons.map((r) => (
-          <Button
-            key={r}
-            density="bench"
-            onClick={() => {
-              setReason(r)
-              setLost(r === 'broken' || r === 'not in its place')
-            }}
-          >
-            {r}
-          </Button>
-        ))}
-      </div>
-      <Field label="Reason" density="bench" value={reason} onText={setReason} />
-      <Checkbox
-        label="The jar is gone: broken or not to be found"
+      {isEarly ? null : (
+        <div className="flex flex-wrap gap-3" role="group" aria-label="What happened">
+          {causes.map((cause) => (
+            <Button
+              key={cause.says}
+              density="bench"
+              aria-pressed={kind === cause.kind && reason === cause.says}
+              className={
+                kind === cause.kind && reason === cause.says ? 'shadow-[inset_0_-4px_0_var(--ink)]' : ''
+              }
+              onClick={() => {
+                setKind(cause.kind)
+                setReason(cause.says)
+              }}
+            >
+              {cause.says}
+            </Button>
+          ))}
+        </div>
+      )}
+      <Field
+        label="Reason"
         density="bench"
-        checked={isLost}
-        onSet={setLost}
+        value={reason}
+        onText={(text) => {
+          setReason(text)
+          setKind((now) => now ?? 'missed')
+        }}
       />
       <ErrorNote error={error} />
     </Dialog>

@@ -11,6 +11,7 @@ import { LayersPanel } from '@/components/bench/layers-panel'
 import { MissDialog } from '@/components/bench/miss-dialog'
 import { nextJar } from '@/components/bench/next-jar'
 import { OverviewPanel } from '@/components/bench/overview-panel'
+import { PaperSwitch, usePaper } from '@/components/bench/paper-switch'
 import { RestPanel } from '@/components/bench/rest-panel'
 import { SlotTabs } from '@/components/bench/slot-tabs'
 import { StationLine } from '@/components/bench/station-line'
@@ -30,7 +31,8 @@ export function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }
   const mayType = person.mayLog && !isDone && !isResting && !jar.isEarly && jar.isStudyRunning
   useAwake(mayType)
   const next = nextJar(bench, jar.code, outbox)
-  const entry = useJarEntry({ jar, outbox, mayType, onChange, onDone: goOn })
+  const paper = usePaper()
+  const entry = useJarEntry({ jar, outbox, mayType, paperAt: paper.paperAt, onChange, onDone: goOn })
 
   function goOn(sentence: string) {
     toast(sentence)
@@ -44,6 +46,7 @@ export function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }
       <JarHead jar={jar} outbox={outbox} onWalk={onWalk} />
       <WalkStrip bench={bench} code={jar.code} />
       <StationLine jar={jar} onMiss={mayType ? () => setMissing(true) : null} />
+      {mayType ? <PaperSwitch paper={paper} /> : null}
       <JarNotices
         jar={jar}
         kept={entry.kept}
@@ -76,9 +79,11 @@ export function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }
         <MissDialog
           jar={jar}
           onClose={() => setMissing(false)}
-          onDone={() => {
+          onDone={(substitute) => {
             setMissing(false)
-            entry.done(`${jar.name} is noted as not read.`)
+            if (substitute === undefined) return entry.done(`${jar.name} is noted as not read.`)
+            onChange()
+            onOpen(substitute)
           }}
         />
       ) : null}

@@ -4,7 +4,7 @@ import { useEffect, useMemo, useRef, useState } from 'react'
 import { askLocally, type AlreadyRead, type Answer } from '@/components/bench/answers'
 import { dayInstrument, rememberInstrument } from '@/components/bench/day-instrument'
 import { emptyDraft, entriesOf, slotsOf, withIds, type Slot } from '@/components/bench/draft'
-import { isKeptJar } from '@/components/bench/kept-jars'
+import { isKeptJar, partsKept } from '@/components/bench/kept-jars'
 import { verdictOf } from '@/components/bench/verdict'
 import type { OutboxItem } from '@/components/device/outbox-item'
 import { useKept } from '@/components/device/use-kept'
@@ -19,6 +19,10 @@ type Options = {
   jar: BenchJarPage
   outbox: OutboxOnScreen
   mayType: boolean
+  /** One attribute of it, with others to come: kept as a part. */
+  part?: string
+  /** Read off a paper form: when it was really measured. */
+  paperAt?: string | null
   onChange: () => void
   /** The entry is on its way: on the server, or on this tablet. */
   onDone: (sentence: string) => void
@@ -27,12 +31,20 @@ type Options = {
 export type JarEntry = ReturnType<typeof useJarEntry>
 
 /** What is typed of one jar in one pull: where the hand is, what it means, and keeping it. */
-export function useJarEntry({ jar, outbox, mayType, onChange, onDone }: Options) {
-  const slots = useMemo(
-    () => slotsOf(jar.fields, jar.tareG !== null && jar.grossG !== null),
-    [jar.fields, jar.tareG, jar.grossG],
+export function useJarEntry({ jar, outbox, mayType, part, paperAt = null, onChange, onDone }: Options) {
+  // What was read one attribute at a time is not asked for again.
+  const fields = useMemo(
+    () =>
+      jar.fields.filter(
+        (f) => !jar.read.includes(f.attribute) && (part === undefined || f.attribute === part),
+      ),
+    [jar.fields, jar.read, part],
   )
-  const draftKey = `jar.${jar.pullJarId}`
+  const slots = useMemo(
+    () => slotsOf(fields, jar.tareG !== null && jar.grossG !== null),
+    [fields, jar.tareG, jar.grossG],
+  )
+  const draftKey = part === undefined ? `jar.${jar.pullJarId}` : `jar.${jar.pullJarId}.${part}`
   const [draft, setDraft] = useKept(draftKey, emptyDraft(''))
   const at = draft.at ?? slots[0]?.key ?? 'note'
   const setAt = (key: string) => setDraft((before) => ({ ...before, at: key }))
@@ -40,7 +52,7 @@ export function useJarEntry({ jar, outbox, mayType, onChange, onDone }: Options)
   const [asked, setAsked] = useState<ClientError | null>(null)
   const [twice, setTwice] = useState<AlreadyRead | null>(null)
   const [isBusy, setBusy] = useState(false)
-  const opening = useOpening(jar, mayType, onChange)
+  const opening = useOpening(jar, mayType && part === undefined, onChange)
   const entries = useMemo(
     () => entriesOf(slots, draft, jar.fillHeightMm, (s) => dayInstrument(jar, s)),
     [slots, draft, jar],
@@ -51,7 +63,9 @@ export function useJarEntry({ jar, outbox, mayType, onChange, onDone }: Options)
     return { key: slot.key, slot, text, verdict: verdictOf(slot.field, entry, jar) }
   })
   const open = slots.filter((s) => (draft.texts[s.key] ?? '').trim() === '')
-  const isThisJar = (item: OutboxItem) => isKeptJar(item) && item.about.pullJarId === jar.pullJarId
+  const isThisJar = (item: OutboxItem) =>
+    item.about.pullJarId === jar.pullJarId &&
+    (part === undefined ? isKeptJar(item) : partsKept([item], jar.pullJarId).includes(part))
 
   function type(key: string, text: string) {
     const id = slots.find((s) => s.key === key)
@@ -91,13 +105,15 @@ export function useJarEntry({ jar, outbox, mayType, onChange, onDone }: Options)
     const sending = { ...filled, confirmed }
     setDraft(() => sending)
     const readings = entriesOf(slots, sending, jar.fillHeightMm, (s) => dayInstrument(jar, s))
-    const missing = jar.fields.filter((f) => !readings.some((r) => r.attribute === f.attribute))
+    const missing = fields.filter((f) => !readings.some((r) => r.attribute === f.attribute))
     setBusy(true)
     // Opening counts as a change of the jar; the jar as it is shown may still be the one before.
     const opened = (await opening.current) ?? jar.version
     const body = {
       version: extra.version ?? Math.max(jar.version, opened),
-      claimedAt: new Date().toISOString(),
+      claimedAt: paperAt ?? new Date().toISOString(),
+      ...(paperAt === null ? {} : { isFromPaper: true }),
+      ...(part === undefined ? {} : { isPartial: true }),
       deviceNow: new Date().toISOString(),
       note: sending.note,
       readings,

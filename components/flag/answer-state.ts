@@ -1,5 +1,5 @@
 import type { FlagPage } from '@/lib/flag/queries/one'
-import { namedJar } from '@/lib/jar/rules'
+import { namedJar } from '@/lib/jar/rules/code'
 import { flagKeys, type FlagCause } from '@/lib/flag/schema'
 
 /** What becomes of it: an answer, or the doubt or the reading itself set aside. */

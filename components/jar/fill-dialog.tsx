@@ -8,7 +8,7 @@ import { NumberField } from '@/components/ui/number-field'
 import { readTyped } from '@/lib/number/rules'
 import { toast } from '@/components/ui/toast'
 import { ClientError, send } from '@/lib/http/fetcher'
-import type { JarRow } from '@/lib/jar/queries'
+import type { JarRow } from '@/lib/jar/queries/jars'
 import { jarKeys } from '@/lib/jar/schema'
 
 /** Tare, gross and fill height of one jar, from which weight loss and layers are told. */

@@ -1,4 +1,4 @@
-import type { JarRow } from '@/lib/jar/queries'
+import type { JarRow } from '@/lib/jar/queries/jars'
 import { labelWords } from '@/lib/label/rules/lines'
 import type { Label } from './label-shapes'
 import { qrOf } from './qr'

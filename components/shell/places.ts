@@ -18,6 +18,7 @@ const entries: Entry[] = [
   { href: '/flags', label: 'Flags', permission: 'flag.comment' },
   { href: '/cases', label: 'Cases', permission: 'case.read' },
   { href: '/reports', label: 'Reports', permission: 'report.read' },
+  { href: '/days', label: 'Days', permission: 'day.review' },
   { href: '/trail', label: 'Record', permission: 'trail.read' },
   { href: '/lab', label: 'Lab', permission: 'bench.read' },
   { href: '/people', label: 'People', permission: 'person.manage' },

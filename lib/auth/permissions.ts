@@ -12,6 +12,8 @@ export const permissions = {
   'photo.add': ['technician', 'formulator'],
   // The original with what the camera wrote into it, place and all; everybody else gets it without.
   'photo.audit': ['qa', 'manager'],
+  'handover.write': ['technician', 'formulator'],
+  'day.review': ['qa'],
   'cycle.log': ['technician', 'formulator'],
   'flag.comment': lab,
   'flag.answer': ['formulator', 'qa'],

@@ -1,4 +1,6 @@
 import * as z from '@/lib/http/zod'
+import type { WhatFollows } from '@/lib/pull/queries/what-follows'
+import { deviceTimes } from '@/lib/reading/schema/entry'
 
 /** As scanned or typed; read by `readJarCode`. */
 export const jarAddress = z.object({ code: z.string().trim().min(1).max(200) })
@@ -21,6 +23,25 @@ export type FilledJar = z.input<typeof filledJar>
 export const mishapKinds = ['missed', 'broken', 'lost', 'wrong jar', 'pulled early'] as const
 export type MishapKind = (typeof mishapKinds)[number]
 
+export const jarMishap = deviceTimes.extend({
+  id: z.uuid(),
+  kind: z.enum(mishapKinds),
+  reason: z.string().trim().min(1, 'Say how it came to that.').max(500),
+  /** The pull it happened in, as it was shown; without one it is the jar alone that is broken, lost or opened. */
+  pull: z.object({ pullJarId: z.uuid(), version: z.number().int().positive() }).nullable().default(null),
+})
+export type JarMishap = z.output<typeof jarMishap>
+
+export type NotedMishap = {
+  id: string
+  /** The line of the pull that will not be read now, and how many later ones with it. */
+  pullJarId: string | null
+  version: number | null
+  alsoMissed: number
+  follows: WhatFollows | null
+}
+
 export const jarKeys = {
+  mishaps: (code: string) => `/api/jars/${encodeURIComponent(code)}/mishaps`,
   one: (code: string) => `/api/jars/${encodeURIComponent(code)}`,
 }

@@ -1,7 +1,7 @@
 import { sql } from 'kysely'
 import type { Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
-import { listJars } from '@/lib/jar/queries'
+import { listJars } from '@/lib/jar/queries/jars'
 import { getStudyHead } from '@/lib/study/queries/head'
 import type { LabelGrid } from './rules/grid'
 

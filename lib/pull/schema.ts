@@ -6,15 +6,11 @@ const version = z.number().int().positive()
 /** `takeOver`: someone else has the jar open, and I go on with it nevertheless. */
 export const openingOfJar = z.object({ version, takeOver: z.boolean().default(false) })
 export const takingOut = z.object({ version })
-export const missedJar = z.object({
-  version,
-  reason: z.string().trim().min(1, 'Say why the jar was not read.').max(500),
-  /** Broken or not to be found: it is lost for later pulls as well. */
-  isJarLost: z.boolean().default(false),
-})
+/** A jar that takes the place of one that was missed; `id` is its new line in the pull. */
+export const standIn = z.object({ id: z.uuid(), jarId: z.uuid() })
 export type OpeningOfJar = z.output<typeof openingOfJar>
 export type TakingOut = z.output<typeof takingOut>
-export type MissedJar = z.output<typeof missedJar>
+export type StandIn = z.output<typeof standIn>
 
 /** Readings of one save, taken back by whoever saved them. */
 export const undoneSave = z.object({ readings: z.array(z.uuid()).min(1, 'Say which readings.').max(60) })
@@ -41,7 +37,8 @@ export const pullKeys = {
   moves: '/api/pulls/moves',
   open: (pullJarId: string) => `/api/pulls/${pullJarId}/open`,
   takeOut: (pullJarId: string) => `/api/pulls/${pullJarId}/take-out`,
-  miss: (pullJarId: string) => `/api/pulls/${pullJarId}/miss`,
   undo: (pullJarId: string) => `/api/pulls/${pullJarId}/undo`,
+  /** What follows from a jar that was not read, and the jars that could take its place. */
+  standIn: (pullJarId: string) => `/api/pulls/${pullJarId}/stand-in`,
   readings: (pullJarId: string) => `/api/pulls/${pullJarId}/readings`,
 }

@@ -1,7 +1,7 @@
 import { sql } from 'kysely'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { POST as log } from '@/app/api/pulls/[id]/readings/route'
-import { POST as miss } from '@/app/api/pulls/[id]/miss/route'
+import { POST as mishap } from '@/app/api/jars/[code]/mishaps/route'
 import { POST as open } from '@/app/api/pulls/[id]/open/route'
 import { POST as takeOut } from '@/app/api/pulls/[id]/take-out/route'
 import { newId } from '@/lib/db/id'
@@ -129,36 +129,21 @@ describe('opening, taking out, missing', () => {
     expect(answer.status).toBe(409)
   })
 
-  it('a missed jar needs a reason, and takes no readings after', async () => {
+  it('a missed jar takes no readings after, and says why', async () => {
     const jar = jarAt(jars, 45, 12, 'watch')
-    const params = { id: jar.pullJarId }
-    const blank = await call(miss, { cookie: technician.cookie, params, body: { version: 1, reason: '  ' } })
-    expect(blank.status).toBe(422)
-    const kept = await call(miss, {
+    const now = new Date().toISOString()
+    const kept = await call(mishap, {
       cookie: technician.cookie,
-      params,
-      body: { version: 1, reason: 'lid cracked' },
+      params: { code: jar.code },
+      body: {
+        ...{ id: newId(), kind: 'missed', reason: 'lid cracked', claimedAt: now, deviceNow: now },
+        pull: { pullJarId: jar.pullJarId, version: 1 },
+      },
     })
     expect(kept.status).toBe(200)
     const late = await send(jar, layered(study, jar, 0, 0))
     expect(late.status).toBe(409)
     expect(late.body.error.sentence).toContain('lid cracked')
-  })
-
-  it('a lost jar is missing from its later pulls too', async () => {
-    const lost = jarAt(jars, 25, 10, 'watch')
-    const answer = await call(miss, {
-      cookie: technician.cookie,
-      params: { id: lost.pullJarId },
-      body: { version: 1, reason: 'fell', isJarLost: true },
-    })
-    expect(answer.body.alsoMissed).toBeGreaterThan(0)
-    const { state } = await t.db
-      .selectFrom('jar')
-      .select('state')
-      .where('code', '=', lost.code)
-      .executeTakeFirstOrThrow()
-    expect(state).toBe('lost')
   })
 
   it('says 404 where there is no such jar', async () => {

@@ -1,6 +1,6 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { isJarCode, jarCode, jarCodes, namedJar, readJarCode } from '@/lib/jar/rules'
+import { isJarCode, jarCode, jarCodes, namedJar, readJarCode } from '@/lib/jar/rules/code'
 
 const alphabet = '23456789CDFHJKMNPRTVWXY'
 const code = fc.integer({ min: 0, max: 2 ** 31 - 1 }).map((seed) => {

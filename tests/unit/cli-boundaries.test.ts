@@ -22,7 +22,7 @@ describe('the walls between the rooms', () => {
     ['lib/jar/rules.ts', "import { findJar } from './queries'", 'run in the browser too'],
     [
       'components/jar/jar-form.tsx',
-      "import { getJar } from '@/lib/jar/queries'",
+      "import { getJar } from '@/lib/jar/queries/jars'",
       'Components run in the browser',
     ],
     [
@@ -47,7 +47,7 @@ describe('the walls between the rooms', () => {
     ['lib/jar/queries.ts', "import type { Db } from '@/lib/db/client'"],
     ['lib/jar/commands/void-jar.ts', "import { sql } from 'kysely'"],
     ['lib/jar/rules.ts', "import type { JarRow } from './queries'"],
-    ['components/jar/jar-form.tsx', "import type { JarRow } from '@/lib/jar/queries'"],
+    ['components/jar/jar-form.tsx', "import type { JarRow } from '@/lib/jar/queries/jars'"],
     ['components/jar/jar-form.tsx', "import { jarInput } from '@/lib/jar/schema'"],
     ['lib/science/mean.ts', "import { assertFinite } from './guard'"],
   ]

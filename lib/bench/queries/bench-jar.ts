@@ -1,4 +1,4 @@
-import { namedJar } from '@/lib/jar/rules'
+import { namedJar } from '@/lib/jar/rules/code'
 import { standsAs } from '@/lib/protocol/rules/plan'
 import type { Standing } from '@/lib/science/series'
 import { fieldsOf, layersOf, worstStanding, type BenchField, type Layers, type Values } from '../rules'

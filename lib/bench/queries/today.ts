@@ -1,11 +1,13 @@
 import { sql } from 'kysely'
 import type { Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
+import { listHandoverNotes } from '@/lib/handover/queries'
 import { benchJar, type BenchJar } from './bench-jar'
 import { jarsToRead } from './jars'
 import { getLabDay } from './lab-day'
 import { listCurrentSeries, listInitialMeans, listLastReadings } from './values'
 import { listWalk } from './walk-stations'
+import { listWeekLoad } from './week-load'
 
 export type Bench = Awaited<ReturnType<typeof todaysBench>>
 export type BenchStation = Bench['stations'][number]
@@ -24,6 +26,9 @@ export async function todaysBench(
       or([
         eb('pj.state', '=', 'resting'),
         and([eb('pj.state', '=', 'due'), eb('pull.dueOn', '<=', today)]),
+        // Pulled early, and not yet read.
+        sql<boolean>`(pj.state = 'due' and exists (select from jar_mishap m
+          where m.pull_jar_id = pj.id and m.kind = 'pulled early'))`,
         eb(sql<string>`(pj.closed_at at time zone ${zone})::date`, '=', today),
       ]),
     )
@@ -36,6 +41,8 @@ export async function todaysBench(
     initials: await listInitialMeans(db, studyIds),
   }
   const places = await listWalk(db, today)
+  const week = await listWeekLoad(db, today)
+  const notes = await listHandoverNotes(db, today, zone)
   const jars = rows.map((row) => ({ stationId: row.stationId, jar: benchJar(row, values, today, now) }))
   const stations = places.map(({ nextOn, nextCount, ...station }) => {
     const here = jars.filter((entry) => entry.stationId === station.id).map((entry) => entry.jar)
@@ -47,7 +54,7 @@ export async function todaysBench(
     }
   })
   const next = stations.flatMap((station) => (station.next ? [station.next.dueOn] : [])).toSorted()[0] ?? null
-  return { today, now, zone, counts: countsOf(jars.map((entry) => entry.jar)), next, stations }
+  return { today, now, zone, counts: countsOf(jars.map((entry) => entry.jar)), next, week, notes, stations }
 }
 
 function countsOf(jars: BenchJar[]) {

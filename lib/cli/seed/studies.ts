@@ -1,5 +1,5 @@
 import { newId } from '@/lib/db/id'
-import { weighFilledJar } from '@/lib/jar/commands'
+import { weighFilledJar } from '@/lib/jar/commands/weigh-filled'
 import { logCycleStep } from '@/lib/cycle/commands/log-half'
 import { cycleStep } from '@/lib/cycle/schema'
 import { approveVersion } from '@/lib/protocol/commands/approve-version'

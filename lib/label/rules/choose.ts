@@ -1,5 +1,5 @@
-import type { JarRow } from '@/lib/jar/queries'
-import { readJarCode } from '@/lib/jar/rules'
+import type { JarRow } from '@/lib/jar/queries/jars'
+import { readJarCode } from '@/lib/jar/rules/code'
 import type { LabelChoice } from '../schema'
 import { labelsPerSheet, type LabelGrid } from './grid'
 

@@ -1,5 +1,5 @@
-import type { JarRow } from '@/lib/jar/queries'
-import { namedJar } from '@/lib/jar/rules'
+import type { JarRow } from '@/lib/jar/queries/jars'
+import { namedJar } from '@/lib/jar/rules/code'
 import { spokenDay } from '@/lib/study/rules/calendar'
 
 type Labelled = Pick<

@@ -1,6 +1,6 @@
 import type { Trx } from '@/lib/db/client'
 import { newId } from '@/lib/db/id'
-import { namedJar } from '@/lib/jar/rules'
+import { namedJar } from '@/lib/jar/rules/code'
 import type { WantedFlag } from '@/lib/flag/rules/wanted'
 import type { Frame, FrameSpare } from '@/lib/series/queries/frame'
 

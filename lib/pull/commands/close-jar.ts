@@ -6,7 +6,13 @@ import type { PullJar } from '../queries/pull-jar'
 import { refuseStale } from '../rules/refusals'
 
 /** In one statement: the jar of the pull is done, and a jar that was opened is spent. */
-export async function closeJar(trx: Trx, actor: Actor, jar: PullJar, input: JarToLog): Promise<number> {
+export async function closeJar(
+  trx: Trx,
+  actor: Actor,
+  jar: PullJar,
+  input: JarToLog,
+  leftOut: readonly string[],
+): Promise<number> {
   const jarState = jar.asks === 'watch' ? 'stored' : 'spent'
   const isFirst = jar.state !== 'done'
   const { rows } = await sql<{ version: number }>`
@@ -17,7 +23,7 @@ export async function closeJar(trx: Trx, actor: Actor, jar: PullJar, input: JarT
     update pull_jar set state = 'done', version = version + 1,
         closed_at = case when ${isFirst} then app_now() else closed_at end,
         closed_by = case when ${isFirst} then ${actor.personId}::uuid else closed_by end,
-        left_out = case when ${isFirst} then ${input.leaveOut}::text[] else left_out end,
+        left_out = case when ${isFirst} then ${leftOut}::text[] else left_out end,
         note = ${noteOf(jar, input)}
       where id = ${jar.id} and version = ${jar.version}
       returning version

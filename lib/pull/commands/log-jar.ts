@@ -78,7 +78,10 @@ export async function logJar(trx: Trx, actor: Actor, input: JarToLog): Promise<L
       .execute()
   }
   const closes = isRead || !input.isPartial || isAllRead(jar, readNow)
-  const version = closes ? await closeJar(trx, actor, jar, input) : await keepOpen(trx, actor, jar, input)
+  const leftOut = input.leaveOut.filter((key) => !readNow.some((one) => one.attribute === key))
+  const version = closes
+    ? await closeJar(trx, actor, jar, input, leftOut)
+    : await keepOpen(trx, actor, jar, input)
   const counting = rows.filter((row) => !isVoided(row))
   keepInFrame(frame, jar, counting, doubts, closes)
   const recomputed = await recomputeSeries(trx, actor, jar.studyId, {

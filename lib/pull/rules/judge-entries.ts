@@ -7,7 +7,7 @@ import { askedConditions, conditionsIn } from '@/lib/reading/rules/conditions'
 import { weeksSince } from '@/lib/science/months'
 import type { Frame } from '@/lib/series/queries/frame'
 import { seriesUnits } from '@/lib/series/rules/input'
-import { sentenceContext } from '@/lib/series/rules/spoken'
+import { sentenceContext, stationWords } from '@/lib/series/rules/spoken'
 import { placeDoubts } from '@/lib/station/rules/moves'
 import { dayIn } from '@/lib/study/rules/calendar'
 import type { PullJar } from '../queries/pull-jar'
@@ -41,6 +41,12 @@ export function judgeEntries(
       frame.study.zone,
     ),
   ]
+  if (jar.kind === 'retain') {
+    common.push({
+      reason: 'place',
+      sentence: `Jar ${jar.code} is a retain: it was not kept at ${stationWords(station)} until this pull. Say whether it counts.`,
+    })
+  }
   for (const key of keys) {
     const own = entries.filter(({ entry }) => entry.attribute === key)
     const unit = units.find(

@@ -123,6 +123,17 @@ export async function loadEvidence(db: Db | Trx, actor: Actor, studyId: string) 
     .select(['j.code as jar', 'pull.label', 'pull.studyStationId', 'pj.missedReason'])
     .where('pj.studyId', '=', studyId)
     .where('pj.state', '=', 'missed')
+    // Where another jar took its place, nothing is missing.
+    .where(({ not, exists, selectFrom }) =>
+      not(
+        exists(
+          selectFrom('pullJar as other')
+            .select('other.id')
+            .whereRef('other.standsInFor', '=', 'pj.id')
+            .where('other.state', '!=', 'missed'),
+        ),
+      ),
+    )
     .where('j.batchId', 'in', ids)
     .orderBy('pull.timeWeeks')
     .execute()

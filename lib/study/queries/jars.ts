@@ -1,7 +1,7 @@
 import { sql, type SqlBool } from 'kysely'
 import type { Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
-import { listJarsOf, type JarRow } from '@/lib/jar/queries'
+import { listJarsOf, type JarRow } from '@/lib/jar/queries/jars'
 import { listChoices } from '@/lib/list/queries/choices'
 import { pageOf } from '@/lib/list/queries/page'
 import { likeTyped, naturally, type Source } from '@/lib/list/queries/source'

@@ -1,5 +1,5 @@
-import type { JarRow } from '@/lib/jar/queries'
-import { namedJar } from '@/lib/jar/rules'
+import type { JarRow } from '@/lib/jar/queries/jars'
+import { namedJar } from '@/lib/jar/rules/code'
 import { choice, describeList } from '@/lib/list/schema'
 import { degrees } from './finding'
 import { withVariant } from './words'

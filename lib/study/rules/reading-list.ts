@@ -1,4 +1,4 @@
-import { namedJar } from '@/lib/jar/rules'
+import { namedJar } from '@/lib/jar/rules/code'
 import { choice, day, describeList } from '@/lib/list/schema'
 import { attributeName, attributeOf } from '@/lib/reading/schema/attributes'
 import type { ReadingEntry } from '../queries/readings'

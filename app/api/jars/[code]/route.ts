@@ -1,6 +1,6 @@
 import { read, write } from '@/lib/http/route'
-import { weighFilledJar } from '@/lib/jar/commands'
-import { getJar } from '@/lib/jar/queries'
+import { weighFilledJar } from '@/lib/jar/commands/weigh-filled'
+import { getJar } from '@/lib/jar/queries/jars'
 import { filledJar, jarAddress } from '@/lib/jar/schema'
 
 export const GET = read({

@@ -2,7 +2,7 @@ import { sql } from 'kysely'
 import type { Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
-import { isJarCode, readJarCode } from '@/lib/jar/rules'
+import { isJarCode, readJarCode } from '@/lib/jar/rules/code'
 import { studiesOf } from '@/lib/study/queries/scope'
 
 function jars(db: Db, actor: Actor) {

@@ -2,7 +2,7 @@ import type { z } from 'zod'
 import type { Actor } from '@/lib/auth/actor'
 import type { Trx } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
-import { readJarCode } from '@/lib/jar/rules'
+import { readJarCode } from '@/lib/jar/rules/code'
 import type { filledJar } from '@/lib/jar/schema'
 import { expectOne } from '@/lib/trail/queries'
 

@@ -1,0 +1,114 @@
+'use client'
+
+import useSWR from 'swr'
+import type { BenchPerson } from '@/components/bench/bench-app'
+import { FieldPanel } from '@/components/bench/field-panel'
+import { JarQuestions } from '@/components/bench/jar-questions'
+import { PhotoPanel } from '@/components/bench/other-panels'
+import { PaperSwitch, usePaper } from '@/components/bench/paper-switch'
+import { SlotTabs } from '@/components/bench/slot-tabs'
+import { useAwake } from '@/components/bench/use-awake'
+import { useJarEntry } from '@/components/bench/use-jar-entry'
+import { photoStep, type WalkStep } from '@/components/bench/walk-steps'
+import type { OutboxOnScreen } from '@/components/device/use-outbox'
+import { Button } from '@/components/ui/button'
+import { ErrorNote } from '@/components/ui/error-note'
+import { toast } from '@/components/ui/toast'
+import type { BenchJar } from '@/lib/bench/queries/bench-jar'
+import type { BenchJarPage } from '@/lib/bench/queries/jar'
+import { benchKeys } from '@/lib/bench/schema'
+import { fetcher } from '@/lib/http/fetcher'
+import { readJarCode } from '@/lib/jar/rules/code'
+
+type Props = {
+  jar: BenchJar
+  step: WalkStep
+  person: BenchPerson
+  outbox: OutboxOnScreen
+  hasNext: boolean
+  onCalled: (code: string) => void
+  onOpen: (code: string) => void
+  onDone: () => void
+  onSkip: () => void
+}
+
+/** One attribute of one jar, with its place, so that the right one is taken from the shelf. */
+export function PartOfJar({ jar, step, ...rest }: Props) {
+  const { data, error } = useSWR<BenchJarPage>(benchKeys.jar(jar.code), fetcher)
+  const place = jar.shelf === null ? '' : `Shelf ${jar.shelf}, place ${jar.place}. `
+  return (
+    <section aria-label={`${step.label} of jar ${jar.name}`} className="mt-3 bg-typed pt-3">
+      <div className="flex flex-wrap items-end justify-between gap-3 px-4 sm:px-5">
+        <div>
+          <h2 className="font-mono text-36 font-700 leading-none sm:text-48">{jar.name}</h2>
+          <p className="mt-1 text-17">
+            {jar.batch.code}, {jar.label}. {place}
+            {jar.standsAs}
+          </p>
+        </div>
+        <Button density="bench" onClick={rest.onSkip}>
+          {rest.hasNext ? 'Later' : 'Leave it open'}
+        </Button>
+      </div>
+      {data && data.pullJarId === jar.pullJarId ? (
+        step.key === photoStep ? (
+          <div className="px-4 pb-5 pt-4 sm:px-7">
+            <PhotoPanel jar={data} />
+            <Button density="bench" kind="primary" className="mt-4 w-full" onClick={rest.onDone}>
+              Next jar
+            </Button>
+          </div>
+        ) : (
+          <Part jar={data} step={step} {...rest} />
+        )
+      ) : (
+        <div className="p-5">
+          {error ? <ErrorNote error={error} /> : <p role="status">The jar is being looked up.</p>}
+        </div>
+      )}
+    </section>
+  )
+}
+
+function Part({
+  jar,
+  step,
+  person,
+  outbox,
+  hasNext,
+  onCalled,
+  onDone,
+}: Omit<Props, 'jar'> & { jar: BenchJarPage }) {
+  useAwake(true)
+  const paper = usePaper()
+  const entry = useJarEntry({
+    ...{ jar, outbox, mayType: true, part: step.key, paperAt: paper.paperAt, onChange: onDone },
+    onDone: (sentence) => {
+      toast(sentence)
+      onDone()
+    },
+  })
+  /** A label reader types into the field that has the focus: a code is no number. */
+  function next() {
+    const code = readJarCode(entry.draft.texts[entry.at] ?? '')
+    if (code === null) return entry.step()
+    entry.type(entry.at, '')
+    onCalled(code)
+  }
+  return (
+    <>
+      {entry.slots.length > 1 ? (
+        <SlotTabs
+          tabs={entry.tabs}
+          at={entry.at}
+          onPick={entry.goTo}
+          note={entry.draft.note}
+          hasPhotos={false}
+        />
+      ) : null}
+      <PaperSwitch paper={paper} />
+      <FieldPanel jar={jar} entry={{ ...entry, step: next }} hasNext={hasNext} />
+      <JarQuestions jar={jar} person={person} entry={entry} />
+    </>
+  )
+}

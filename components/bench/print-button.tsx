@@ -1,0 +1,11 @@
+'use client'
+
+import { Button } from '@/components/ui/button'
+
+export function PrintButton() {
+  return (
+    <Button kind="primary" density="bench" onClick={() => window.print()}>
+      Print
+    </Button>
+  )
+}
