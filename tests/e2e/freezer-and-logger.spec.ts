@@ -29,7 +29,7 @@ test('A half is held and ended at the board, and a logger’s file is taken', as
   await page.getByRole('button', { name: /logger.s file/ }).click()
   const hour = (hours: number) => new Date(Date.now() - hours * 3_600_000).toISOString().slice(0, 19)
   const rows = [`${hour(5)}Z;45,1`, `${hour(4)}Z;---`, `${hour(3)}Z;45,3`]
-  await dialog.getByLabel('File').setInputFiles({
+  await dialog.getByLabel('File', { exact: true }).setInputFiles({
     name: 'oven-3.csv',
     mimeType: 'text/csv',
     buffer: Buffer.from(`Time;Temperature (°C)\n${rows.join('\n')}\n`),

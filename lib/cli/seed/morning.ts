@@ -91,7 +91,7 @@ async function checkInstruments(filling: Filling, { instruments }: Places): Prom
 async function takeHotWeekend(filling: Filling, places: Places): Promise<void> {
   const { mada } = filling.people
   const station = places.stations.find((one) => one.name === 'room cabinet')!
-  const from = daysAgo(filling, 144, 13).getTime()
+  const from = daysAgo(filling, 143, 13).getTime()
   const rows = Array.from({ length: 3 * 144 }, (_, i) => {
     const hot = Math.max(0, Math.min(1, (i - 40) / 60, (380 - i) / 50))
     const celsius = 25.1 + hot * 6.2 + Math.sin(i / 23) * 0.3 + filling.noise.normal() * 0.08
