@@ -4,7 +4,7 @@ import useSWR from 'swr'
 import type { BenchPerson } from '@/components/bench/bench-app'
 import { FieldPanel } from '@/components/bench/field-panel'
 import { JarQuestions } from '@/components/bench/jar-questions'
-import { PhotoPanel } from '@/components/bench/other-panels'
+import { PhotoPanel } from '@/components/photo/photo-panel'
 import { PaperSwitch, usePaper } from '@/components/bench/paper-switch'
 import { SlotTabs } from '@/components/bench/slot-tabs'
 import { useAwake } from '@/components/bench/use-awake'
@@ -53,7 +53,7 @@ export function PartOfJar({ jar, step, ...rest }: Props) {
       {data && data.pullJarId === jar.pullJarId ? (
         step.key === photoStep ? (
           <div className="px-4 pb-5 pt-4 sm:px-7">
-            <PhotoPanel jar={data} />
+            <PhotoPanel jar={data} onMeasured={null} />
             <Button density="bench" kind="primary" className="mt-4 w-full" onClick={rest.onDone}>
               Next jar
             </Button>
