@@ -3,6 +3,7 @@
 import { usePathname } from 'next/navigation'
 import { BenchDay } from '@/components/bench/bench-day'
 import { JarScreen } from '@/components/bench/jar-screen'
+import { UndoBar } from '@/components/bench/undo-bar'
 import { useBenchData } from '@/components/device/use-bench-data'
 import { useRememberPerson, type BenchPerson } from '@/components/device/last-person'
 import { useOutbox } from '@/components/device/use-outbox'
@@ -19,19 +20,24 @@ export function BenchApp({ person }: { person: BenchPerson }) {
   useRememberPerson(person)
 
   if (!bench) return null
-  return code === null ? (
-    <BenchDay bench={bench} person={person} outbox={outbox} onOpen={openJar} onChange={refresh} />
-  ) : (
-    <JarScreen
-      key={code}
-      code={code}
-      bench={bench}
-      person={person}
-      outbox={outbox}
-      onOpen={openJar}
-      onWalk={openWalk}
-      onChange={refresh}
-    />
+  return (
+    <>
+      <UndoBar outbox={outbox} onOpen={openJar} onChange={refresh} />
+      {code === null ? (
+        <BenchDay bench={bench} person={person} outbox={outbox} onOpen={openJar} onChange={refresh} />
+      ) : (
+        <JarScreen
+          key={code}
+          code={code}
+          bench={bench}
+          person={person}
+          outbox={outbox}
+          onOpen={openJar}
+          onWalk={openWalk}
+          onChange={refresh}
+        />
+      )}
+    </>
   )
 }
 

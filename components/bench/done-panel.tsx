@@ -1,25 +1,24 @@
 'use client'
 
 import { useState } from 'react'
+import { CorrectDialog, VoidDialog } from '@/components/bench/change-dialogs'
 import { EarlyAct, MissedFollows } from '@/components/bench/missed-follows'
 import { JarGlyph } from '@/components/marks/jar-glyph'
 import { ReadingPhoto } from '@/components/photo/reading-photo'
 import { Button } from '@/components/ui/button'
-import { Dialog } from '@/components/ui/dialog'
-import { ErrorNote } from '@/components/ui/error-note'
-import { Field } from '@/components/ui/field'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 import type { BenchJar } from '@/lib/bench/queries/bench-jar'
-import { newId } from '@/lib/db/id'
-import { ClientError, send } from '@/lib/http/fetcher'
 import { attributeName } from '@/lib/reading/schema/attributes'
-import { readingKeys } from '@/lib/reading/schema/change'
 import { dayText } from '@/lib/report/rules'
+import { dayIn } from '@/lib/study/rules/calendar'
 import { writtenAs } from '@/lib/bench/rules'
 import { shownWithUnit } from '@/lib/study/rules/words'
 
+export type JarReading = BenchJarPage['readings'][number]
+
 type Props = {
   jar: BenchJarPage
+  personId: string
   mayLog: boolean
   onChange: () => void
   onWalk: () => void
@@ -28,9 +27,15 @@ type Props = {
 }
 
 /** What is on record for this jar in this pull; a fresh entry can be voided with a reason, never changed. */
-export function DonePanel({ jar, mayLog, onChange, onWalk, next, onOpen }: Props) {
-  const [voiding, setVoiding] = useState<string | null>(null)
-  const gone = new Set(jar.readings.flatMap((r) => (r.supersedesId ? [r.supersedesId] : [])))
+export function DonePanel({ jar, personId, mayLog, onChange, onWalk, next, onOpen }: Props) {
+  const [changing, setChanging] = useState<{ id: string; how: 'correct' | 'void' } | null>(null)
+  const chains = chainsOf(jar.readings)
+  const changed = jar.readings.find((r) => r.id === changing?.id)
+  const close = () => setChanging(null)
+  function closeAndTell() {
+    close()
+    onChange()
+  }
   return (
     <div className="flex flex-1 flex-col gap-5 px-4 pb-6 pt-5 sm:px-7">
       <div className="flex items-end gap-6">
@@ -42,41 +47,48 @@ export function DonePanel({ jar, mayLog, onChange, onWalk, next, onOpen }: Props
         />
         <h2 className="text-30 leading-tight sm:text-36">{headline(jar, mayLog)}</h2>
       </div>
-      {jar.readings.length > 0 ? (
+      {chains.length > 0 ? (
         <ul>
-          {jar.readings
-            .filter((r) => !r.isVoid)
-            .map((r) => {
-              const isGone = gone.has(r.id)
-              const by = jar.readings.find((x) => x.supersedesId === r.id)
-              return (
-                <li
-                  key={r.id}
-                  className="flex min-h-16 flex-wrap items-center justify-between gap-3 border-b border-hair py-1"
-                >
-                  <span className={isGone ? 'text-soft' : ''}>
-                    <b>{attributeName(r.attribute)}</b>{' '}
-                    <span className={isGone ? 'line-through' : ''}>
-                      {r.word ??
-                        (r.value === null
-                          ? r.typed
-                          : shownWithUnit(writtenAs(jar.fields, r.attribute), r.value))}
-                    </span>
-                    <span className="block text-17 text-soft">
-                      typed {r.typed} by {r.by}
-                      {by ? `; ${by.isVoid ? 'voided' : 'corrected'}: ${by.reason}` : ''}
-                      {r.doubts.length > 0 && !isGone ? `; doubt: ${r.doubts[0]?.sentence}` : ''}
-                    </span>
-                  </span>
-                  {r.photoLines ? <ReadingPhoto lines={r.photoLines} of={`jar ${jar.code}`} /> : null}
-                  {mayLog && !isGone ? (
-                    <Button density="bench" kind="danger" onClick={() => setVoiding(r.id)}>
+          {chains.map((chain) => {
+            const current = chain.at(-1)!
+            const isMine = mayLog && !current.isVoid && isOwnToday(current, personId, jar)
+            return (
+              <li
+                key={chain[0]!.id}
+                className="flex min-h-16 flex-wrap items-center justify-between gap-3 border-b border-hair py-2"
+              >
+                <div className={current.isVoid ? 'text-soft' : ''}>
+                  {chain
+                    .filter((r) => !r.isVoid)
+                    .map((r) => (
+                      <ReadingLine
+                        key={r.id}
+                        jar={jar}
+                        reading={r}
+                        by={chain.find((x) => x.supersedesId === r.id)}
+                      />
+                    ))}
+                </div>
+                {current.photoLines ? (
+                  <ReadingPhoto lines={current.photoLines} of={`jar ${jar.code}`} />
+                ) : null}
+                {isMine ? (
+                  <div className="flex gap-3">
+                    <Button density="bench" onClick={() => setChanging({ id: current.id, how: 'correct' })}>
+                      Correct
+                    </Button>
+                    <Button
+                      density="bench"
+                      kind="danger"
+                      onClick={() => setChanging({ id: current.id, how: 'void' })}
+                    >
                       Void
                     </Button>
-                  ) : null}
-                </li>
-              )
-            })}
+                  </div>
+                ) : null}
+              </li>
+            )
+          })}
         </ul>
       ) : null}
       {mayLog && jar.state === 'missed' && jar.isStudyRunning ? (
@@ -93,16 +105,11 @@ export function DonePanel({ jar, mayLog, onChange, onWalk, next, onOpen }: Props
           Back to the walk
         </Button>
       </div>
-      {voiding ? (
-        <VoidDialog
-          id={voiding}
-          name={jar.name}
-          onClose={() => setVoiding(null)}
-          onDone={() => {
-            setVoiding(null)
-            onChange()
-          }}
-        />
+      {changed && changing?.how === 'correct' ? (
+        <CorrectDialog jar={jar} reading={changed} onClose={close} onDone={closeAndTell} />
+      ) : null}
+      {changed && changing?.how === 'void' ? (
+        <VoidDialog id={changed.id} name={jar.name} onClose={close} onDone={closeAndTell} />
       ) : null}
     </div>
   )
@@ -119,49 +126,39 @@ function headline(jar: BenchJarPage, mayLog: boolean): string {
     : `Due by ${dayText(jar.windowTo)}. A technician or formulator reads it.`
 }
 
-type VoidProps = { id: string; name: string; onClose: () => void; onDone: () => void }
+/** Each first entry with what took its place, in order. */
+function chainsOf(readings: JarReading[]): JarReading[][] {
+  const after = (id: string) => readings.find((r) => r.supersedesId === id)
+  return readings
+    .filter((r) => r.supersedesId === null)
+    .map((first) => {
+      const chain = [first]
+      for (let next = after(first.id); next; next = after(next.id)) chain.push(next)
+      return chain
+    })
+}
 
-function VoidDialog({ id, name, onClose, onDone }: VoidProps) {
-  const [reason, setReason] = useState('')
-  const [error, setError] = useState<unknown>(null)
-  const [isBusy, setBusy] = useState(false)
-  async function voidIt() {
-    setBusy(true)
-    setError(null)
-    try {
-      await send(readingKeys.void(id), 'POST', { id: newId(), reason })
-      onDone()
-    } catch (refused) {
-      setError(refused)
-      setBusy(false)
-    }
-  }
+/** A technician mends an own entry on the lab's day it was made; later ones are the formulator's, at the Desk. */
+function isOwnToday(reading: JarReading, personId: string, jar: BenchJarPage): boolean {
+  return reading.recordedBy === personId && dayIn(jar.zone, reading.recordedAt) === jar.today
+}
+
+type LineProps = { jar: BenchJarPage; reading: JarReading; by: JarReading | undefined }
+
+/** One value as it was entered; struck through where another took its place, with why. */
+function ReadingLine({ jar, reading, by }: LineProps) {
+  const { word, value, typed, doubts } = reading
   return (
-    <Dialog
-      isOpen
-      onClose={onClose}
-      title={`Void the reading of ${name}?`}
-      sentence="It stays on record, struck through, with your reason and your name."
-      density="bench"
-      acts={
-        <>
-          <Button density="bench" onClick={onClose}>
-            Leave it
-          </Button>
-          <Button density="bench" kind="danger-asked" busy={isBusy} onClick={voidIt}>
-            Void it
-          </Button>
-        </>
-      }
-    >
-      <Field
-        label="Reason"
-        density="bench"
-        value={reason}
-        onText={setReason}
-        error={error instanceof ClientError ? error.fields['reason'] : undefined}
-      />
-      <ErrorNote error={error} />
-    </Dialog>
+    <p className={by ? 'text-soft' : ''}>
+      <b>{attributeName(reading.attribute)}</b>{' '}
+      <span className={by ? 'line-through' : ''}>
+        {word ?? (value === null ? typed : shownWithUnit(writtenAs(jar.fields, reading.attribute), value))}
+      </span>
+      <span className="block text-17 text-soft">
+        typed {typed} by {reading.by}
+        {by ? `; ${by.isVoid ? 'voided' : 'corrected'}: ${by.reason}` : ''}
+        {doubts.length > 0 && !by ? `; doubt: ${doubts[0]?.sentence}` : ''}
+      </span>
+    </p>
   )
 }

@@ -1,6 +1,7 @@
 import type { BenchField } from '@/lib/bench/rules'
 import { kindEntry, layersEntry } from '@/components/bench/kind-entry'
 import { newId } from '@/lib/db/id'
+import type { Conditions } from '@/lib/reading/rules/conditions'
 import type { EntryDetail } from '@/lib/reading/schema/entry'
 import type { PhotoLinesOfReading } from '@/lib/reading/schema/photo-lines'
 import { readTyped } from '@/lib/reading/schema/typed'
@@ -20,6 +21,10 @@ export type Draft = {
   ids: Record<string, string>
   confirmed: string[]
   instruments: Record<string, string>
+  /** What differs from the initial's conditions, by attribute. */
+  conditions: Record<string, Partial<Conditions>>
+  /** Attributes of which the value itself is typed instead of the torque. */
+  direct: string[]
   note: string
   /** Where the layers were measured on a photo; typed over, they are a ruler's again. */
   photoLines?: PhotoLinesOfReading
@@ -29,10 +34,20 @@ export type Draft = {
 }
 
 export function emptyDraft(now: string): Draft {
-  return { texts: {}, ids: {}, confirmed: [], instruments: {}, note: '', begunAt: now }
+  return {
+    texts: {},
+    ids: {},
+    confirmed: [],
+    instruments: {},
+    conditions: {},
+    direct: [],
+    note: '',
+    begunAt: now,
+  }
 }
 
-export function slotsOf(fields: BenchField[], hasMass: boolean): Slot[] {
+/** `direct` are attributes of which the value is typed instead of the torque. */
+export function slotsOf(fields: BenchField[], hasMass: boolean, direct: readonly string[] = []): Slot[] {
   return fields.flatMap((field): Slot[] => {
     const each = Array.from({ length: field.replicates }, (_, i) => i + 1)
     if (field.kind === 'layers')
@@ -43,7 +58,7 @@ export function slotsOf(fields: BenchField[], hasMass: boolean): Slot[] {
     const kind =
       field.kind !== 'torque' && field.kind !== 'number'
         ? field.kind
-        : field.kind === 'torque' && field.viscosity
+        : field.kind === 'torque' && field.viscosity && !direct.includes(field.attribute)
           ? 'torque'
           : field.attribute === 'mass' && hasMass
             ? 'gross'
@@ -98,20 +113,20 @@ export function entriesOf(
     if (slot.kind === 'word') return [{ ...base, typed, detail: { word: typed } }]
     const value = readTyped(typed) ?? NaN
     if (slot.kind === 'torque')
-      return [
-        {
-          ...base,
-          typed,
-          detail: {
-            torquePercent: value,
-            spindle: slot.field.viscosity?.spindle,
-            rpm: slot.field.viscosity?.rpm,
-          },
-        },
-      ]
+      return [{ ...base, typed, detail: { torquePercent: value, ...conditionsUsed(slot, draft) } }]
     if (slot.kind === 'gross') return [{ ...base, typed, detail: { grossG: value } }]
-    return [{ ...base, ...kindEntry(slot, typed, text) }]
+    const read = kindEntry(slot, typed, text)
+    return [{ ...base, ...read, detail: { ...read.detail, ...conditionsUsed(slot, draft) } }]
   })
+}
+
+/** The initial's conditions with what is said to differ; only what is known of them. */
+export function conditionsUsed(slot: Slot, draft: Draft): EntryDetail {
+  const isViscosity = slot.field.kind === 'torque'
+  if (!isViscosity && slot.field.attribute !== 'ph') return {}
+  const used = { ...slot.field.conditions, ...draft.conditions[slot.field.attribute] }
+  const known = Object.entries(used).filter(([, value]) => value !== null)
+  return Object.fromEntries(isViscosity ? known : known.filter(([key]) => key === 'sampleTemperatureC'))
 }
 
 /** Every entry gets its id once, when it is first typed. */
@@ -122,4 +137,10 @@ export function withIds(draft: Draft, slots: Slot[]): Draft {
     ids[id] ??= newId()
   }
   return { ...draft, ids }
+}
+
+/** Inputs that stand side by side: the replicates of an attribute, the layers of a jar. */
+export function groupsOf<T extends { slot: Slot }>(tabs: readonly T[]): T[][] {
+  const keys = [...new Set(tabs.map((tab) => tab.slot.field.attribute))]
+  return keys.map((key) => tabs.filter((tab) => tab.slot.field.attribute === key))
 }

@@ -1,6 +1,6 @@
 import type { PanelProps } from '@/components/bench/kind-panel'
 import { PanelHead } from '@/components/bench/panel-head'
-import { FieldBand } from '@/components/bench/value-panel'
+import { FieldBand } from '@/components/bench/field-band'
 import { TextArea } from '@/components/ui/text-area'
 import { dropCount, dropsOf, readDrops } from '@/lib/batch/rules/droplets'
 import { dropletMeasureWords } from '@/lib/protocol/rules/words'

@@ -1,77 +1,99 @@
+'use client'
+
+import { useEffect, useRef, type ReactNode } from 'react'
 import { KeepButton, whyNotKeep } from '@/components/bench/keep-button'
 import { hasOwnPanel, KindPanel } from '@/components/bench/kind-panel'
 import { LayerExtras } from '@/components/bench/layer-extras'
-import { NotePanel, WordPanel } from '@/components/bench/other-panels'
-import type { JarEntry } from '@/components/bench/use-jar-entry'
-import { ValuePanel } from '@/components/bench/value-panel'
+import { LayerFields } from '@/components/bench/layer-fields'
+import { NotePanel } from '@/components/bench/note-panel'
+import { NumberFields } from '@/components/bench/number-fields'
 import { PhotoPanel } from '@/components/photo/photo-panel'
+import type { JarEntry } from '@/components/bench/use-jar-entry'
+import { WordPanel } from '@/components/bench/word-panel'
 import { ErrorNote } from '@/components/ui/error-note'
+import { afterKey, NumberPad } from '@/components/ui/number-pad'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 
-/** Where the hand is: one panel for each kind of field, and the button that keeps what is typed. */
-export function FieldPanel({
-  jar,
-  entry,
-  hasNext,
-}: {
-  jar: BenchJarPage
-  entry: JarEntry
-  hasNext: boolean
-}) {
+type Props = { jar: BenchJarPage; entry: JarEntry; hasNextJar: boolean }
+
+/** Where the hand is: what is typed, and docked by the thumb the keys and what keeps the jar. */
+export function FieldPanel({ jar, entry, hasNextJar }: Props) {
   const here = entry.tabs.find((tab) => tab.key === entry.at)
+  const group = entry.groups.find((one) => one.some((tab) => tab.key === entry.at)) ?? []
   const impossible = entry.tabs.find((tab) => tab.verdict.state === 'impossible')
   const keepButton = (
     <KeepButton
       busy={entry.isBusy}
       left={entry.open.length}
       why={whyNotKeep(entry.entries.length, impossible?.verdict)}
-      hasNext={hasNext}
+      hasNext={hasNextJar}
       onKeep={() => void entry.save()}
-      onStep={entry.open.some((s) => s.key !== entry.at) ? entry.step : null}
+      onStep={entry.hasNext ? entry.step : null}
     />
   )
+  const kind = here?.slot.kind
+  const hasPad = here !== undefined && kind !== 'word' && !hasOwnPanel(here.slot)
   const read = (key: string) => entry.draft.texts[key] ?? ''
   return (
-    <div className="flex-1 bg-typed px-4 pb-5 pt-4 sm:px-7">
+    <div className="min-w-0 flex-1 bg-typed px-4 pt-3 sm:px-7">
       <ErrorNote error={entry.error} />
-      {here && here.slot.kind !== 'word' && !hasOwnPanel(here.slot) ? (
-        <ValuePanel
-          jar={jar}
-          slot={here.slot}
-          text={here.text}
-          verdict={here.verdict}
-          instrument={entry.instrumentOf(here.slot)}
-          onInstrument={(id) => entry.chooseInstrument(here.slot, id)}
-          onText={(text) => entry.type(here.key, text)}
-          onEnter={entry.step}
-          keepButton={keepButton}
-        />
-      ) : (
-        <>
-          {here && hasOwnPanel(here.slot) ? (
-            <KindPanel
-              slot={here.slot}
-              text={here.text}
-              verdict={here.verdict}
-              read={read}
-              type={entry.type}
-            />
-          ) : here ? (
-            <WordPanel slot={here.slot} text={here.text} onText={(text) => entry.type(here.key, text)} />
-          ) : null}
-          {entry.at === 'note' ? <NotePanel note={entry.draft.note} onNote={entry.note} /> : null}
-          {entry.at === 'photo' ? (
-            <PhotoPanel
-              jar={jar}
-              onMeasured={entry.slots.some((s) => s.kind === 'layer') ? entry.measure : null}
-            />
-          ) : null}
-          <div className="ml-auto mt-4 max-w-[300px]">{keepButton}</div>
-        </>
-      )}
-      {here?.slot.kind === 'layer' ? (
-        <LayerExtras slot={here.slot} text={here.text} read={read} type={entry.type} />
-      ) : null}
+      <div className="grid gap-x-7 gap-y-2 sm:grid-cols-[minmax(0,1fr)_324px]">
+        {here && hasPad ? (
+          kind === 'layer' ? (
+            <div className="min-w-0">
+              <LayerFields jar={jar} entry={entry} group={group} here={here} />
+              <details className="mt-2">
+                <summary className="flex min-h-16 items-center text-18 underline underline-offset-4">
+                  Hairline, bleed or a cream layer
+                </summary>
+                <LayerExtras slot={here.slot} text={here.text} read={read} type={entry.type} />
+              </details>
+            </div>
+          ) : (
+            <NumberFields jar={jar} entry={entry} group={group} here={here} />
+          )
+        ) : (
+          <Landing key={entry.at} isWide={here !== undefined && hasOwnPanel(here.slot)}>
+            {kind === 'word' ? <WordPanel entry={entry} group={group} /> : null}
+            {here && hasOwnPanel(here.slot) ? (
+              <KindPanel
+                {...{ slot: here.slot, text: here.text, verdict: here.verdict, read }}
+                type={entry.type}
+              />
+            ) : null}
+            {entry.at === 'note' ? <NotePanel note={entry.draft.note} onNote={entry.note} /> : null}
+            {entry.at === 'photo' ? (
+              <PhotoPanel
+                jar={jar}
+                onMeasured={entry.slots.some((s) => s.kind === 'layer') ? entry.measure : null}
+              />
+            ) : null}
+          </Landing>
+        )}
+        <div className="sticky bottom-0 -mx-4 self-end bg-typed px-4 pb-3 pt-2 sm:mx-0 sm:px-0 sm:col-start-2 [@media(max-height:640px)]:static">
+          {here && hasPad ? (
+            <NumberPad
+              hasMinus={here.slot.field.possible.lower < 0 && kind === 'number'}
+              onKey={(key) => entry.type(here.key, afterKey(here.text, key))}
+            >
+              {keepButton}
+            </NumberPad>
+          ) : (
+            keepButton
+          )}
+        </div>
+      </div>
+    </div>
+  )
+}
+
+/** The focus comes along where no number is typed, so that the next key is for what is seen. */
+function Landing({ isWide, children }: { isWide: boolean; children: ReactNode }) {
+  const place = useRef<HTMLDivElement>(null)
+  useEffect(() => place.current?.focus({ preventScroll: true }), [])
+  return (
+    <div ref={place} tabIndex={-1} className={`min-w-0 outline-none ${isWide ? 'sm:col-span-2' : ''}`}>
+      {children}
     </div>
   )
 }

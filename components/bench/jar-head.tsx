@@ -34,7 +34,7 @@ export function JarHead({
         {jar.standsAs ? <p className="text-17 font-650 sm:text-18">{capital(jar.standsAs)}</p> : null}
       </div>
       <Tray outbox={outbox} />
-      <LightSwitch />
+      <LightSwitch className="max-sm:[&>:last-child]:hidden" />
     </header>
   )
 }

@@ -15,6 +15,7 @@ import { PaperSwitch, usePaper } from '@/components/bench/paper-switch'
 import { RestPanel } from '@/components/bench/rest-panel'
 import { SlotTabs } from '@/components/bench/slot-tabs'
 import { StationLine } from '@/components/bench/station-line'
+import { TakeOut } from '@/components/bench/take-out'
 import { useAwake } from '@/components/bench/use-awake'
 import { useJarEntry } from '@/components/bench/use-jar-entry'
 import { WalkStrip } from '@/components/bench/walk-strip'
@@ -32,19 +33,23 @@ export function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }
   useAwake(mayType)
   const next = nextJar(bench, jar.code, outbox)
   const paper = usePaper()
-  const entry = useJarEntry({ jar, outbox, mayType, paperAt: paper.paperAt, onChange, onDone: goOn })
+  const entry = useJarEntry({
+    ...{ jar, outbox, mayType, paperAt: paper.paperAt, onChange, onDone: goOn },
+    asksPhoto: jar.asks === 'watch' && person.mayAddPhotos,
+  })
 
-  function goOn(sentence: string) {
-    toast(sentence)
+  function goOn() {
     onChange()
     if (next) onOpen(next.code)
     else onWalk()
   }
 
   return (
-    <div className="mx-auto flex min-h-dvh max-w-[1180px] flex-col">
+    <div className="mx-auto flex min-h-dvh max-w-[1440px] flex-col">
       <JarHead jar={jar} outbox={outbox} onWalk={onWalk} />
-      <WalkStrip bench={bench} code={jar.code} />
+      <div className="beside:hidden">
+        <WalkStrip bench={bench} code={jar.code} />
+      </div>
       <StationLine jar={jar} onMiss={mayType ? () => setMissing(true) : null} />
       {mayType ? <PaperSwitch paper={paper} /> : null}
       <JarNotices
@@ -55,6 +60,7 @@ export function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }
       {mayType || isResting ? null : (
         <DonePanel
           jar={jar}
+          personId={person.personId}
           mayLog={person.mayLog}
           onChange={onChange}
           onWalk={onWalk}
@@ -65,13 +71,20 @@ export function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }
       {isResting ? <RestPanel jar={jar} onWalk={onWalk} onChange={onChange} /> : null}
       {mayType ? (
         <>
-          {entry.slots.some((s) => s.kind === 'layer') ? (
-            <LayersPanel jar={jar} entry={entry} />
-          ) : (
-            <OverviewPanel jar={jar} entry={entry} onChange={onChange} />
-          )}
-          <SlotTabs entry={entry} hasPhotos={person.mayAddPhotos} />
-          <FieldPanel jar={jar} entry={entry} hasNext={next !== null} />
+          {jar.state === 'due' && jar.restHours > 0 && jar.asks !== 'watch' ? (
+            <TakeOut jar={jar} onChange={onChange} />
+          ) : null}
+          <div className="flex flex-1 flex-col beside:grid beside:grid-cols-[minmax(0,1fr)_minmax(0,1.25fr)] beside:grid-rows-[auto_1fr] beside:gap-x-3">
+            <div className="beside:row-span-2">
+              {entry.slots.some((s) => s.kind === 'layer') ? (
+                <LayersPanel jar={jar} entry={entry} />
+              ) : (
+                <OverviewPanel jar={jar} entry={entry} />
+              )}
+            </div>
+            <SlotTabs entry={entry} hasPhotos={person.mayAddPhotos} />
+            <FieldPanel jar={jar} entry={entry} hasNextJar={next !== null} />
+          </div>
         </>
       ) : null}
       <JarQuestions jar={jar} person={person} entry={entry} />
@@ -81,7 +94,10 @@ export function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }
           onClose={() => setMissing(false)}
           onDone={(substitute) => {
             setMissing(false)
-            if (substitute === undefined) return entry.done(`${jar.name} is noted as not read.`)
+            if (substitute === undefined) {
+              toast(`${jar.name} is noted as not read.`, { density: 'bench' })
+              return goOn()
+            }
             onChange()
             onOpen(substitute)
           }}

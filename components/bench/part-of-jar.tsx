@@ -4,16 +4,15 @@ import useSWR from 'swr'
 import type { BenchPerson } from '@/components/bench/bench-app'
 import { FieldPanel } from '@/components/bench/field-panel'
 import { JarQuestions } from '@/components/bench/jar-questions'
-import { PhotoPanel } from '@/components/photo/photo-panel'
 import { PaperSwitch, usePaper } from '@/components/bench/paper-switch'
 import { SlotTabs } from '@/components/bench/slot-tabs'
 import { useAwake } from '@/components/bench/use-awake'
 import { useJarEntry } from '@/components/bench/use-jar-entry'
 import { photoStep, type WalkStep } from '@/components/bench/walk-steps'
 import type { OutboxOnScreen } from '@/components/device/use-outbox'
+import { PhotoPanel } from '@/components/photo/photo-panel'
 import { Button } from '@/components/ui/button'
 import { ErrorNote } from '@/components/ui/error-note'
-import { toast } from '@/components/ui/toast'
 import type { BenchJar } from '@/lib/bench/queries/bench-jar'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 import { benchKeys } from '@/lib/bench/schema'
@@ -83,10 +82,7 @@ function Part({
   const paper = usePaper()
   const entry = useJarEntry({
     ...{ jar, outbox, mayType: true, part: step.key, paperAt: paper.paperAt, onChange: onDone },
-    onDone: (sentence) => {
-      toast(sentence)
-      onDone()
-    },
+    onDone,
   })
   /** A label reader types into the field that has the focus: a code is no number. */
   function next() {
@@ -97,17 +93,9 @@ function Part({
   }
   return (
     <>
-      {entry.slots.length > 1 ? (
-        <SlotTabs
-          tabs={entry.tabs}
-          at={entry.at}
-          onPick={entry.goTo}
-          note={entry.draft.note}
-          hasPhotos={false}
-        />
-      ) : null}
+      {entry.slots.length > 1 ? <SlotTabs entry={entry} hasPhotos={false} /> : null}
       <PaperSwitch paper={paper} />
-      <FieldPanel jar={jar} entry={{ ...entry, step: next }} hasNext={hasNext} />
+      <FieldPanel jar={jar} entry={{ ...entry, step: next }} hasNextJar={hasNext} />
       <JarQuestions jar={jar} person={person} entry={entry} />
     </>
   )

@@ -1,50 +1,27 @@
-import type { JarEntry } from '@/components/bench/use-jar-entry'
 import { hasOwnPanel } from '@/components/bench/kind-panel'
-import { slotLabel, slotUnit, type Verdict } from '@/components/bench/verdict'
+import type { FieldTab, JarEntry } from '@/components/bench/use-jar-entry'
+import { slotUnit } from '@/components/bench/verdict'
 
 /** The jar's fields in the order of the protocol; a check mark for what is in. */
 export function SlotTabs({ entry, hasPhotos }: { entry: JarEntry; hasPhotos: boolean }) {
-  const { tabs, at, goTo } = entry
+  const { at, goTo, groups } = entry
   const { note } = entry.draft
-  const top = tabs.find((tab) => tab.slot.part === 'top')
-  const bottom = tabs.find((tab) => tab.slot.part === 'bottom')
   return (
     <div
       role="tablist"
       aria-label="What is measured"
-      className="mt-3 flex gap-3 overflow-x-auto px-4 sm:px-5"
+      className="mt-2 flex min-w-0 gap-3 overflow-x-auto px-4 sm:px-5"
     >
-      {top && bottom ? (
+      {groups.map((group) => (
         <Tab
-          label="Layers"
-          text={
-            top.text === '' && bottom.text === ''
-              ? 'not yet'
-              : `${top.text || '0'} and ${bottom.text || '0'} mm`
-          }
-          isHere={at === top.key || at === bottom.key}
-          mark={markOf(top.verdict)}
-          onPick={() => goTo(top.key)}
+          key={group[0]!.key}
+          label={group[0]!.slot.kind === 'layer' ? 'Layers' : labelOf(group)}
+          text={textOf(group)}
+          isHere={group.some((tab) => tab.key === at)}
+          mark={markOf(group)}
+          onPick={() => goTo((group.find((tab) => tab.text === '') ?? group[0]!).key)}
         />
-      ) : null}
-      {tabs
-        .filter((tab) => tab.slot.kind !== 'layer')
-        .map((tab) => (
-          <Tab
-            key={tab.key}
-            label={slotLabel(tab.slot)}
-            text={
-              tab.text === ''
-                ? 'not yet'
-                : hasOwnPanel(tab.slot)
-                  ? tab.text
-                  : `${tab.text} ${tab.slot.kind === 'word' ? '' : slotUnit(tab.slot)}`
-            }
-            isHere={tab.key === at}
-            mark={markOf(tab.verdict)}
-            onPick={() => goTo(tab.key)}
-          />
-        ))}
+      ))}
       {hasPhotos ? (
         <Tab label="Photo" text="take one" isHere={at === 'photo'} mark={null} onPick={() => goTo('photo')} />
       ) : null}
@@ -59,9 +36,22 @@ export function SlotTabs({ entry, hasPhotos }: { entry: JarEntry; hasPhotos: boo
   )
 }
 
-function markOf(verdict: Verdict): TabProps['mark'] {
-  if (verdict.state === 'impossible') return 'wrong'
-  return verdict.state === 'value' ? (verdict.isOut ? 'out' : 'in') : null
+function labelOf([first]: FieldTab[]): string {
+  return first!.slot.kind === 'gross' ? 'Mass' : first!.slot.field.label
+}
+
+function textOf(group: FieldTab[]): string {
+  if (group.every((tab) => tab.text === '')) return 'not yet'
+  const texts = group.map((tab) => tab.text || '–')
+  const [{ slot }] = group as [FieldTab]
+  return `${texts.join(slot.kind === 'layer' ? ' and ' : '; ')} ${slot.kind === 'word' || hasOwnPanel(slot) ? '' : slotUnit(slot)}`
+}
+
+function markOf(group: FieldTab[]): TabProps['mark'] {
+  if (group.some((tab) => tab.verdict.state === 'impossible')) return 'wrong'
+  if (group.some((tab) => tab.verdict.state === 'value' && tab.verdict.isOut)) return 'out'
+  const isIn = group.every((tab) => tab.verdict.state === 'value')
+  return isIn ? 'in' : null
 }
 
 type TabProps = {

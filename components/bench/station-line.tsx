@@ -4,13 +4,13 @@ import type { BenchJarPage } from '@/lib/bench/queries/jar'
 export function StationLine({ jar, onMiss }: { jar: BenchJarPage; onMiss: (() => void) | null }) {
   const { name, temperatureC, caution } = jar.station
   return (
-    <div className="flex flex-wrap items-center justify-between gap-3 px-4 pt-2.5 text-17 sm:px-7">
+    <div className="order-last flex flex-wrap items-center justify-between gap-x-3 px-4 py-1 text-17 sm:order-none sm:px-7">
       <p>
         {name}
         {temperatureC === null ? '' : `, ${temperatureC} °C`}. {caution ? <b>{caution}</b> : null}
       </p>
       {onMiss ? (
-        <button type="button" className="min-h-11 underline underline-offset-4" onClick={onMiss}>
+        <button type="button" className="min-h-16 underline underline-offset-4" onClick={onMiss}>
           Cannot be read
         </button>
       ) : null}

@@ -3,15 +3,27 @@
 import { useEffect, useMemo, useRef, useState } from 'react'
 import { askLocally, type AlreadyRead, type Answer } from '@/components/bench/answers'
 import { dayInstrument, rememberInstrument } from '@/components/bench/day-instrument'
-import { emptyDraft, entriesOf, slotsOf, withIds, type Slot } from '@/components/bench/draft'
+import {
+  conditionsUsed,
+  emptyDraft,
+  entriesOf,
+  groupsOf,
+  slotsOf,
+  withIds,
+  type Draft,
+  type Slot,
+} from '@/components/bench/draft'
+import { setLastSave, type LastSave } from '@/components/bench/last-save'
 import { isKeptJar, partsKept } from '@/components/bench/kept-jars'
-import { verdictOf } from '@/components/bench/verdict'
+import { verdictOf, type Verdict } from '@/components/bench/verdict'
 import type { OutboxItem } from '@/components/device/outbox-item'
 import { useKept } from '@/components/device/use-kept'
 import type { OutboxOnScreen } from '@/components/device/use-outbox'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 import { ClientError, send } from '@/lib/http/fetcher'
-import { pullKeys } from '@/lib/pull/schema'
+import { pullKeys, type AssignedRepeat } from '@/lib/pull/schema'
+import { changedConditions, conditionsIn, type Conditions } from '@/lib/reading/rules/conditions'
+import { readTyped } from '@/lib/reading/schema/typed'
 import type { PhotoLinesOfReading } from '@/lib/reading/schema/photo-lines'
 import { separationOfLines } from '@/lib/science/photo-lines'
 
@@ -25,13 +37,23 @@ type Options = {
   paperAt?: string | null
   onChange: () => void
   /** The entry is on its way: on the server, or on this tablet. */
-  onDone: (sentence: string) => void
+  onDone: () => void
+  /** A watch jar's picture is taken each time, by whoever may. */
+  asksPhoto?: boolean
 }
 
 export type JarEntry = ReturnType<typeof useJarEntry>
+export type FieldTab = { key: string; slot: Slot; text: string; verdict: Verdict }
+
+const isOpen = (draft: Draft, key: string) => (draft.texts[key] ?? '').trim() === ''
+
+/** A height on the ruler: to a tenth, within the fill. */
+const inFill = (mm: number, fillMm: number) =>
+  (Math.round(Math.max(0, Math.min(fillMm, mm)) * 10) / 10).toFixed(1)
 
 /** What is typed of one jar in one pull: where the hand is, what it means, and keeping it. */
-export function useJarEntry({ jar, outbox, mayType, part, paperAt = null, onChange, onDone }: Options) {
+export function useJarEntry(options: Options) {
+  const { jar, outbox, mayType, part, paperAt = null, asksPhoto = false, onChange, onDone } = options
   // What was read one attribute at a time is not asked for again.
   const fields = useMemo(
     () =>
@@ -40,14 +62,16 @@ export function useJarEntry({ jar, outbox, mayType, part, paperAt = null, onChan
       ),
     [jar.fields, jar.read, part],
   )
-  const slots = useMemo(
-    () => slotsOf(fields, jar.tareG !== null && jar.grossG !== null),
-    [fields, jar.tareG, jar.grossG],
-  )
   const draftKey = part === undefined ? `jar.${jar.pullJarId}` : `jar.${jar.pullJarId}.${part}`
   const [draft, setDraft] = useKept(draftKey, emptyDraft(''))
-  const at = draft.at ?? slots[0]?.key ?? 'note'
+  const slots = useMemo(
+    () => slotsOf(fields, jar.tareG !== null && jar.grossG !== null, draft.direct),
+    [fields, jar.tareG, jar.grossG, draft.direct],
+  )
+  const isThere = (key: string) => key === 'photo' || key === 'note' || slots.some((s) => s.key === key)
+  const at = draft.at && isThere(draft.at) ? draft.at : (slots[0]?.key ?? 'note')
   const setAt = (key: string) => setDraft((before) => ({ ...before, at: key }))
+  const [seenPhoto, setSeenPhoto] = useState(false)
   const [error, setError] = useState<unknown>(null)
   const [asked, setAsked] = useState<ClientError | null>(null)
   const [twice, setTwice] = useState<AlreadyRead | null>(null)
@@ -57,12 +81,13 @@ export function useJarEntry({ jar, outbox, mayType, part, paperAt = null, onChan
     () => entriesOf(slots, draft, jar.fillHeightMm, (s) => dayInstrument(jar, s)),
     [slots, draft, jar],
   )
-  const tabs = slots.map((slot) => {
+  const tabs = slots.map((slot): FieldTab => {
     const entry = entries.find((e) => e.attribute === slot.field.attribute && e.replicate === slot.replicate)
     const text = draft.texts[slot.key] ?? ''
     return { key: slot.key, slot, text, verdict: verdictOf(slot.field, entry, jar) }
   })
-  const open = slots.filter((s) => (draft.texts[s.key] ?? '').trim() === '')
+  const groups = groupsOf(tabs)
+  const open = slots.filter((s) => isOpen(draft, s.key))
   const isThisJar = (item: OutboxItem) =>
     item.about.pullJarId === jar.pullJarId &&
     (part === undefined ? isKeptJar(item) : partsKept([item], jar.pullJarId).includes(part))
@@ -99,6 +124,32 @@ export function useJarEntry({ jar, outbox, mayType, part, paperAt = null, onChan
     }))
   }
 
+  function setConditions({ field }: Slot, conditions: Partial<Conditions>, isDirect: boolean) {
+    const { attribute } = field
+    setDraft((d) => {
+      const others = d.direct.filter((one) => one !== attribute)
+      const isOther = isDirect !== d.direct.includes(attribute)
+      const keys = Object.keys(d.texts).filter((key) => isOther && key.startsWith(`${attribute}.`))
+      return {
+        ...d,
+        direct: isDirect ? [...others, attribute] : others,
+        conditions: { ...d.conditions, [attribute]: conditions },
+        texts: { ...d.texts, ...Object.fromEntries(keys.map((key) => [key, ''])) },
+      }
+    })
+  }
+
+  const heightOf = (tab: FieldTab) => readTyped(tab.text) ?? 0
+  const setHeight = (tab: FieldTab, mm: number) => type(tab.key, inFill(mm, jar.fillHeightMm))
+
+  /** Typed with one press, and on to what is open. */
+  function fill(texts: Record<string, string>) {
+    for (const [key, text] of Object.entries(texts)) type(key, text)
+    const filled = { ...draft, texts: { ...draft.texts, ...texts } }
+    const following = nextOpen(filled, Object.keys(texts).at(-1)!)
+    if (following) goTo(following)
+  }
+
   async function save(extra: Answer = {}) {
     const filled = withIds(draft, slots)
     const confirmed = [...new Set([...filled.confirmed, ...(extra.confirmed ?? [])])]
@@ -122,7 +173,7 @@ export function useJarEntry({ jar, outbox, mayType, part, paperAt = null, onChan
     }
     setError(null)
     try {
-      const outcome = await outbox.send(
+      const outcome = await outbox.send<{ repeats: AssignedRepeat[] }>(
         {
           ...{ url: pullKeys.readings(jar.pullJarId), body },
           about: {
@@ -134,10 +185,16 @@ export function useJarEntry({ jar, outbox, mayType, part, paperAt = null, onChan
         },
         isThisJar,
       )
-      if (outcome.how === 'sent') done(`Kept: ${jar.name}`)
+      const save = {
+        jar: { ...jar, stationName: jar.station.name },
+        readings: readings.map((entry) => entry.id),
+        draft: sending,
+        draftKey,
+      }
+      if (outcome.how === 'sent') done({ ...save, isKeptHere: false, repeats: outcome.answer.repeats })
       // Asked here, because nobody will be at the jar when the entry goes out.
       else if (missing.length > 0 && !extra.leaveOut) setAsked(askLocally(missing))
-      else done(`Kept on this tablet: ${jar.name}. It goes out when the network is back.`)
+      else done({ ...save, isKeptHere: true, repeats: [] })
     } catch (refused) {
       if (!(refused instanceof ClientError)) setError(refused)
       else if (refused.code === 'confirm') setAsked(refused)
@@ -148,30 +205,48 @@ export function useJarEntry({ jar, outbox, mayType, part, paperAt = null, onChan
     }
   }
 
-  function done(sentence: string) {
+  function done(save: Omit<LastSave, 'at'>) {
     setAsked(null)
     setTwice(null)
-    onDone(sentence)
+    setLastSave(save)
+    onDone()
   }
 
   const labelOf = (attribute: string) =>
     jar.fields.find((field) => field.attribute === attribute)?.label ?? attribute
 
+  /** The next that is open, in the protocol's order; a watch jar's last is its photo. */
+  function nextOpen(now: Draft, from: string): string | null {
+    const at = slots.findIndex((s) => s.key === from)
+    const around = [...slots.slice(at + 1), ...slots.slice(0, Math.max(0, at))]
+    return around.find((s) => isOpen(now, s.key))?.key ?? (asksPhoto && !seenPhoto ? 'photo' : null)
+  }
+
+  function goTo(key: string) {
+    if (key === 'photo') setSeenPhoto(true)
+    setAt(key)
+  }
+
   function step() {
-    const from = slots.findIndex((s) => s.key === at)
-    const following = slots.slice(from + 1).find((s) => (draft.texts[s.key] ?? '') === '') ?? open[0]
-    if (following && following.key !== at) setAt(following.key)
+    const following = nextOpen(draft, at)
+    if (following && following !== at) goTo(following)
     else if (entries.length > 0) void save()
   }
 
   return {
-    ...{ slots, tabs, open, entries, draft, at, error, asked, twice, isBusy },
+    ...{ slots, tabs, groups, open, entries, draft, at, error, asked, twice, isBusy },
     kept: outbox.items.find(isThisJar),
     instrumentOf: (slot: Slot) =>
       draft.instruments[`${slot.field.attribute}.${slot.replicate}`] ?? dayInstrument(jar, slot),
-    goTo: setAt,
+    goTo,
     note: (note: string) => setDraft((d) => ({ ...d, note })),
-    ...{ type, measure, step, save, done, chooseInstrument },
+    ...{ type, fill, measure, step, save, chooseInstrument, setConditions, heightOf, setHeight },
+    stepHeight: (tab: FieldTab, by: number) => setHeight(tab, heightOf(tab) + by),
+    /** Whether it is read under other conditions than the initial was. */
+    isChanged: (slot: Slot) =>
+      changedConditions(conditionsIn(conditionsUsed(slot, draft)), slot.field.conditions) !== null,
+    /** Whether Enter leads somewhere before it keeps the jar. */
+    hasNext: nextOpen(draft, at) !== null,
     askNoMore: () => setAsked(null),
     decideLater: () => setTwice(null),
   }

@@ -3,10 +3,17 @@ import type { DraftEntry, Slot } from '@/components/bench/draft'
 import type { BenchField } from '@/lib/bench/rules'
 import { ImpossibleEntry } from '@/lib/reading/rules/impossible-entry'
 import { valueOf } from '@/lib/reading/rules/value'
-import { bandUsed, isNearEdge } from '@/lib/science/band'
+import { changedConditions, conditionsIn } from '@/lib/reading/rules/conditions'
+import { bandUsed, isNearEdge, nearerEdge } from '@/lib/science/band'
 import { percentOf } from '@/lib/science/percent'
+import { torqueDoubtWithin } from '@/lib/science/viscosity'
 
-export type JarMeasures = { tareG: number | null; grossG: number | null; fillHeightMm: number | null }
+export type JarMeasures = {
+  tareG: number | null
+  grossG: number | null
+  fillHeightMm: number | null
+  instruments: { id: string; spindles: { name: string; constant: number }[] }[]
+}
 
 /** What the typed text means now: the value it makes, or why it cannot be, and where it lies. */
 export type Verdict =
@@ -19,6 +26,8 @@ export type Verdict =
       isEdge: boolean
       sentence: string | null
       advice: string | null
+      /** What makes it hard to compare, said before it is kept. */
+      doubts: string[]
     }
 
 export function verdictOf(field: BenchField, entry: DraftEntry | undefined, jar: JarMeasures): Verdict {
@@ -26,8 +35,9 @@ export function verdictOf(field: BenchField, entry: DraftEntry | undefined, jar:
   try {
     const last = field.last[0]?.value ?? null
     const { planned, initialDetail: initial, emulsionType } = field
-    const { value } = valueOf(entry, { planned, jar, spindles: [], last, initial, emulsionType })
-    return judged(field, value)
+    const spindles = jar.instruments.find((one) => one.id === entry.instrumentId)?.spindles ?? []
+    const { value } = valueOf(entry, { planned, jar, spindles, last, initial, emulsionType })
+    return { ...judged(field, value), doubts: doubtsOf(field, entry, value) }
   } catch (error) {
     if (!(error instanceof ImpossibleEntry)) throw error
     const part = error.field === 'detail.topMm' ? 'top' : error.field === 'detail.bottomMm' ? 'bottom' : null
@@ -35,7 +45,16 @@ export function verdictOf(field: BenchField, entry: DraftEntry | undefined, jar:
   }
 }
 
-function judged(field: BenchField, value: number): Verdict {
+/** By the same rules as the server's. */
+function doubtsOf(field: BenchField, { detail }: DraftEntry, value: number): string[] {
+  const { torquePercent } = detail
+  const room = field.band && field.initial !== null ? nearerEdge(field.band, field.initial) : Infinity
+  const torque = torquePercent === undefined ? null : torqueDoubtWithin(torquePercent, room, value)
+  const changed = changedConditions(conditionsIn(detail), field.conditions)
+  return [...(torque ? [`${torque}.`] : []), ...(changed ? [changed] : [])]
+}
+
+function judged(field: BenchField, value: number) {
   const { lower, upper } = field.band ?? { lower: null, upper: null }
   const isBelow = lower !== null && value < lower
   const isAbove = upper !== null && value > upper
@@ -47,7 +66,7 @@ function judged(field: BenchField, value: number): Verdict {
         ? `${shownValue(field, Math.abs(value - edge))} ${field.unit === '%' ? 'points' : field.unit}`
         : `${percentOf(Math.abs(value - edge), edge).toFixed(1)} %`
     return {
-      state: 'value',
+      state: 'value' as const,
       value,
       isOut: true,
       isEdge: false,
@@ -58,7 +77,7 @@ function judged(field: BenchField, value: number): Verdict {
   const used = field.initial === null ? 0 : (bandUsed({ lower, upper }, field.initial, value) ?? 0)
   const isEdge = isNearEdge(used) && (lower !== null || upper !== null)
   return {
-    state: 'value',
+    state: 'value' as const,
     value,
     isOut: false,
     isEdge,
@@ -80,8 +99,7 @@ export function bandText(field: BenchField): string {
 export function slotLabel(slot: Slot): string {
   if (slot.kind === 'layer') return slot.part === 'top' ? 'Oil on top' : 'Water below'
   if (slot.kind === 'gross') return 'Mass'
-  const label = slot.kind === 'torque' ? 'Viscosity' : slot.field.label
-  return slot.field.replicates > 1 ? `${label} ${slot.replicate}` : label
+  return slot.field.replicates > 1 ? `${slot.field.label} ${slot.replicate}` : slot.field.label
 }
 
 export function slotUnit(slot: Slot): string {

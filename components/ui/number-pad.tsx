@@ -2,6 +2,8 @@
 
 type Props = {
   onKey: (key: string) => void
+  /** Where a value may lie below zero, a key of its own stands beside what is under the keys. */
+  hasMinus?: boolean
   /** What stands under the keys, such as the button that keeps the entry. */
   children?: React.ReactNode
 }
@@ -9,7 +11,7 @@ type Props = {
 const keys = ['7', '8', '9', '4', '5', '6', '1', '2', '3', '.', '0', 'back'] as const
 
 /** Keys for gloves: 64 px high, 12 apart. The field keeps the focus, so that a real keyboard works beside it. */
-export function NumberPad({ onKey, children }: Props) {
+export function NumberPad({ onKey, hasMinus = false, children }: Props) {
   return (
     <div>
       <div className="grid grid-cols-3 gap-3" role="group" aria-label="Number pad">
@@ -26,7 +28,24 @@ export function NumberPad({ onKey, children }: Props) {
           </button>
         ))}
       </div>
-      {children ? <div className="mt-3">{children}</div> : null}
+      {children || hasMinus ? (
+        <div className="mt-3 flex gap-3">
+          {hasMinus ? (
+            <button
+              type="button"
+              aria-label="Minus"
+              onPointerDown={(event) => event.preventDefault()}
+              onClick={() => onKey('-')}
+              className="flex min-h-16 w-[92px] shrink-0 items-center justify-center rounded border-2 border-rule bg-ground active:bg-recess"
+            >
+              <svg viewBox="0 0 32 32" width="32" height="32" aria-hidden>
+                <path d="M4 16H28" stroke="currentColor" strokeWidth="4" />
+              </svg>
+            </button>
+          ) : null}
+          <div className="min-w-0 flex-1">{children}</div>
+        </div>
+      ) : null}
     </div>
   )
 }
@@ -34,6 +53,7 @@ export function NumberPad({ onKey, children }: Props) {
 /** What a key does to the text that is being typed. */
 export function afterKey(text: string, key: string): string {
   if (key === 'back') return text.slice(0, -1)
+  if (key === '-') return text.startsWith('-') ? text.slice(1) : `-${text}`
   if (key === '.') return /[.,]/.test(text) ? text : `${text || '0'}.`
   return text.length >= 12 ? text : text + key
 }

@@ -1,5 +1,6 @@
 import { askedAt } from '@/lib/protocol/rules/plan'
 import type { PlannedAttribute, ProtocolPlan } from '@/lib/protocol/schema'
+import { askedConditions, type Conditions } from '@/lib/reading/rules/conditions'
 import { attributeOf, type Attribute, type AttributeKey } from '@/lib/reading/schema/attributes'
 import { toleranceBand } from '@/lib/science/band'
 import { ScienceError } from '@/lib/science/guard'
@@ -41,6 +42,8 @@ export type BenchField = {
   emulsionType: string | null
   band: Band | null
   initial: number | null
+  /** Under which the initial was read, else what the method says. */
+  conditions: Conditions
   /** The newest first; one on the Bench, three on a jar's own screen. */
   last: LastValue[]
   standing: Standing
@@ -91,7 +94,8 @@ function fieldOf(planned: PlannedAttribute, jar: JarOfBench, values: Values): Be
   const isHere = (row: { studyId: string; batchId: string; attribute: string }) =>
     row.studyId === jar.studyId && row.batchId === jar.batchId && row.attribute === key
   const series = values.series.find((row) => isHere(row) && row.studyStationId === jar.studyStationId)
-  const initial = series?.initial ?? values.initials.find(isHere)?.value ?? null
+  const atStart = values.initials.find(isHere)
+  const initial = series?.initial ?? atStart?.value ?? null
   return {
     attribute: planned.attribute,
     label: attribute.label,
@@ -104,8 +108,9 @@ function fieldOf(planned: PlannedAttribute, jar: JarOfBench, values: Values): Be
     method: planned.method,
     viscosity: planned.viscosity ?? null,
     planned,
-    initialDetail: values.initials.find(isHere)?.detail ?? null,
+    initialDetail: atStart?.detail ?? null,
     emulsionType: jar.emulsionType,
+    conditions: askedConditions(atStart?.detail ?? null, planned),
     band: series?.band ?? bandFrom(planned, initial),
     initial,
     last: values.readings

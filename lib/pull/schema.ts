@@ -16,6 +16,16 @@ export type StandIn = z.output<typeof standIn>
 export const undoneSave = z.object({ readings: z.array(z.uuid()).min(1, 'Say which readings.').max(60) })
 export type UndoneSave = z.output<typeof undoneSave>
 
+/** A spare jar that is called for by a reading. */
+export type AssignedRepeat = {
+  pullJarId: string
+  jarCode: string
+  name: string
+  shelf: number | null
+  place: number | null
+  attribute: string
+}
+
 const day = z.iso.date()
 
 /** Pulls that leave a closed day, each with the day on which it stood when this was chosen. */

@@ -85,6 +85,8 @@ async function listReadingsOf(db: Db, pullJarIds: string[]) {
     .innerJoin('person', 'person.id', 'r.recordedBy')
     .select(['r.id', 'r.pullJarId', 'r.attribute', 'r.replicate', 'r.value', 'r.word', 'r.typed'])
     .select(['r.measuredAt', 'r.isVoid', 'r.supersedesId', 'r.reason', 'person.initials as by'])
+    .select(['r.instrumentId', 'r.recordedBy', 'r.recordedAt'])
+    .select((eb) => eb.ref('r.detail').$castTo<Record<string, unknown>>().as('detail'))
     .select(doubtsOf('r').as('doubts'))
     .select(sql<PhotoLinesOfReading | null>`r.detail -> 'photoLines'`.as('photoLines'))
     .where('r.pullJarId', 'in', pullJarIds)

@@ -3,15 +3,7 @@ import { newId } from '@/lib/db/id'
 import { namedJar } from '@/lib/jar/rules/code'
 import type { WantedFlag } from '@/lib/flag/rules/wanted'
 import type { Frame, FrameSpare } from '@/lib/series/queries/frame'
-
-export type AssignedRepeat = {
-  pullJarId: string
-  jarCode: string
-  name: string
-  shelf: number | null
-  place: number | null
-  attribute: string
-}
+import type { AssignedRepeat } from '../schema'
 
 type Wish = { want: WantedFlag; pullId: string; repeatOf: string; spare: FrameSpare | null }
 

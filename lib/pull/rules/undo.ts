@@ -1,11 +1,10 @@
 import type { Actor } from '@/lib/auth/actor'
 import { refuse } from '@/lib/http/errors'
 import type { PullJar } from '../queries/pull-jar'
+import { undoSeconds } from './undo-seconds'
 
 /** What a void says whose author took a save back at once. */
 export const undoneReason = 'undone by its author'
-/** So long the tablet offers it. */
-export const undoSeconds = 30
 /** What the request may take on its way. */
 const graceSeconds = 10
 

@@ -1,0 +1,48 @@
+'use client'
+
+import { LastValues } from '@/components/bench/last-values'
+import type { FieldTab, JarEntry } from '@/components/bench/use-jar-entry'
+
+/** Words against the initial: one press each, the same as last time first at hand, then on to what is open. */
+export function WordPanel({ entry, group }: { entry: JarEntry; group: FieldTab[] }) {
+  const { field } = group[0]!.slot
+  const last = field.last[0]?.word
+  const fill = (word: string) => entry.fill(Object.fromEntries(group.map((tab) => [tab.key, word])))
+  return (
+    <div className="min-w-0">
+      <h2 className="text-22 font-650">{field.label}</h2>
+      <p className="text-17 text-soft">{field.method}</p>
+      <LastValues field={field} />
+      {last ? (
+        <button
+          type="button"
+          onClick={() => fill(last)}
+          className="mt-2 min-h-16 rounded border-2 border-rule bg-paper px-4 text-18"
+        >
+          Same as last: <b>{last}</b>
+        </button>
+      ) : null}
+      {group.map((tab) => (
+        <div
+          key={tab.key}
+          className="mt-3 grid grid-cols-1 gap-3 sm:grid-cols-2"
+          role="radiogroup"
+          aria-label={group.length > 1 ? `${field.label} ${tab.slot.replicate}` : field.label}
+        >
+          {(field.words ?? []).map((word) => (
+            <button
+              key={word}
+              type="button"
+              role="radio"
+              aria-checked={tab.text === word}
+              onClick={() => entry.fill({ [tab.key]: word })}
+              className={`min-h-[72px] rounded px-5 text-left text-22 ${tab.text === word ? 'border-[3px] border-ink bg-paper font-700' : 'border-2 border-rule bg-ground'}`}
+            >
+              {word}
+            </button>
+          ))}
+        </div>
+      ))}
+    </div>
+  )
+}

@@ -1,0 +1,2 @@
+/** So long a save can be taken back. */
+export const undoSeconds = 30
