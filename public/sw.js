@@ -66,7 +66,7 @@ async function dropOldCaches() {
 }
 
 async function fromCache(request) {
-  const kept = await caches.match(request)
+  const kept = await caches.match(request, { ignoreVary: true })
   if (kept) return kept
   const answer = await fetch(request)
   if (answer.ok) {
@@ -77,7 +77,7 @@ async function fromCache(request) {
 }
 
 async function open(request) {
-  const kept = await caches.open(cacheName).then((cache) => cache.match(shell))
+  const kept = await caches.open(cacheName).then((cache) => cache.match(shell, { ignoreVary: true }))
   if (!kept) return fetch(request)
   let timer
   const late = new Promise((resolve) => {

@@ -19,7 +19,12 @@ export function BenchApp({ person }: { person: BenchPerson }) {
   const outbox = useOutbox(refresh)
   useRememberPerson(person)
 
-  if (!bench) return null
+  if (!bench)
+    return (
+      <p role="status" className="p-5">
+        The Bench is being looked up.
+      </p>
+    )
   return (
     <>
       <UndoBar outbox={outbox} onOpen={openJar} onChange={refresh} />
