@@ -5,12 +5,12 @@ import { useWidth } from '@/components/charts/use-width'
 import { BandBar } from '@/components/marks/band-bar'
 import { Button } from '@/components/ui/button'
 import { ErrorNote } from '@/components/ui/error-note'
+import { afterKey, NumberPad } from '@/components/ui/number-pad'
 import { gramsText, percentOffText, toleranceGrams, toleranceWords } from '@/lib/batch/rules/weighing'
 import type { BatchPage } from '@/lib/batch/queries/get-batch'
 import { percentText } from '@/lib/formula/rules/numbers'
 import { newId } from '@/lib/db/id'
 import type { Balance } from './balance-choice'
-import { NumberPad } from './number-pad'
 import { PortionList } from './portion-list'
 import { useEntry } from './use-entry'
 import type { Judged, WeighDraft } from './weigh-draft'
@@ -143,11 +143,7 @@ export function WeighPanel({ work, line, next, balance, draft, now, onDraft, onK
       </div>
       <div className="flex flex-col gap-3">
         {isBench ? (
-          <NumberPad
-            value={draft[pad]}
-            onText={(text) => onDraft({ [pad]: text })}
-            label={pad === 'weight' ? `Digits of ${line.inciName}` : 'Digits of the tare'}
-          />
+          <NumberPad onKey={(key) => onDraft({ [pad]: afterKey(draft[pad], key) })} />
         ) : null}
         <Button type="submit" kind={verdict?.isWithin ? 'primary' : 'secondary'} busy={isSending} why={why}>
           {isCorrection

@@ -1,7 +1,7 @@
 'use client'
 
 import { useState } from 'react'
-import type { BenchPerson } from '@/components/bench/bench-app'
+import type { BenchPerson } from '@/components/device/last-person'
 import { codesKept, partsKept } from '@/components/bench/kept-jars'
 import { PartOfJar } from '@/components/bench/part-of-jar'
 import { TinyJar } from '@/components/bench/tiny-jar'

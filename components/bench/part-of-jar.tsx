@@ -1,7 +1,7 @@
 'use client'
 
 import useSWR from 'swr'
-import type { BenchPerson } from '@/components/bench/bench-app'
+import type { BenchPerson } from '@/components/device/last-person'
 import { FieldPanel } from '@/components/bench/field-panel'
 import { JarQuestions } from '@/components/bench/jar-questions'
 import { PaperSwitch, usePaper } from '@/components/bench/paper-switch'

@@ -7,7 +7,7 @@ import { Button, type Density } from '@/components/ui/button'
 import { Dialog } from '@/components/ui/dialog'
 import { ErrorNote } from '@/components/ui/error-note'
 import { Field } from '@/components/ui/field'
-import { NumberPad } from '@/components/ui/number-pad'
+import { afterKey, NumberPad } from '@/components/ui/number-pad'
 import { toast } from '@/components/ui/toast'
 import { newId } from '@/lib/db/id'
 import { fetcher } from '@/lib/http/fetcher'
@@ -104,20 +104,7 @@ export function TemperatureDialog({ station, density, onClose, onDone }: Props) 
         error={side ? `This is ${side} its limits: the record will call it an excursion.` : undefined}
         autoFocus
       />
-      {isBench ? (
-        <div className="flex gap-3">
-          <div className="flex-1">
-            <NumberPad value={text} onText={setText} label="Number pad" />
-          </div>
-          <Button
-            density="bench"
-            aria-label="Change the sign"
-            onClick={() => setText(text.startsWith('-') ? text.slice(1) : `-${text}`)}
-          >
-            ±
-          </Button>
-        </div>
-      ) : null}
+      {isBench ? <NumberPad hasMinus onKey={(key) => setText((typed) => afterKey(typed, key))} /> : null}
       <ErrorNote error={error} />
     </Dialog>
   )

@@ -4,7 +4,6 @@ import { storage } from '@/lib/files/storage'
 import { refuse } from '@/lib/http/errors'
 import type { Received } from '@/lib/http/upload'
 import { originalKey } from '@/lib/photo/rules/keys'
-import { dayIn } from '@/lib/study/rules/calendar'
 import { getStudyHead, listStudyBatches } from '@/lib/study/queries/head'
 import type { OutsideFields } from './schema'
 
@@ -15,7 +14,6 @@ export async function addOutsideResult(
   studyCode: string,
   file: Received,
   fields: OutsideFields,
-  now: string,
 ) {
   const study = await getStudyHead(trx, actor, studyCode)
   const known = await trx
@@ -34,7 +32,7 @@ export async function addOutsideResult(
       batch: 'Choose a batch of this study.',
     })
   }
-  if (fields.reportedOn > dayIn(study.zone, now)) {
+  if (fields.reportedOn > study.today) {
     throw refuse.invalid('A report cannot be of a day to come. Give the day that it carries.', {
       reportedOn: 'This day is still to come.',
     })

@@ -18,7 +18,8 @@ export const outsideFields = z
       .string()
       .default('')
       .transform(blank)
-      .pipe(z.coerce.number('Give the week as a number.').min(0).max(520).optional()),
+      .transform((value) => (value === undefined ? undefined : Number(value.replace(',', '.'))))
+      .pipe(z.number('Give the week as a number.').min(0).max(520).optional()),
     what: z.enum(outsideTests, 'Choose what was tested.'),
     test: text(160).min(1, 'Name the test, such as challenge test with five strains.'),
     outcome: z.enum(outcomes, 'Say whether it passed.'),

@@ -159,6 +159,8 @@ const table: Record<Permission, string> = {
   'reading.log': 'yes yes no no no',
   'photo.add': 'yes yes no no no',
   'photo.audit': 'no no yes yes no',
+  'handover.write': 'yes yes no no no',
+  'day.review': 'no no yes no no',
   'cycle.log': 'yes yes no no no',
   'flag.comment': 'yes yes yes yes no',
   'flag.answer': 'no yes yes no no',

@@ -113,7 +113,10 @@ export async function getInstrument(db: Db, _actor: Actor, id: string) {
   const instrument = await db
     .selectFrom('instrument')
     .select(columns)
-    .select((eb) => eb.ref('instrument.spindles').$castTo<Spindle[]>().as('spindles'))
+    .select((eb) => [
+      eb.ref('instrument.spindles').$castTo<Spindle[]>().as('spindles'),
+      eb.ref('instrument.dailyCheck').$castTo<DailyCheck | null>().as('dailyCheck'),
+    ])
     .where('id', '=', id)
     .executeTakeFirst()
   if (!instrument) throw refuse.notFound()

@@ -17,5 +17,5 @@ export const POST = upload({
   types: documentTypes,
   fields: outsideFields,
   handler: ({ db, actor, params, file, fields, now }) =>
-    addOutsideResult(db, actor, params.code, file, fields, now),
+    addOutsideResult(db, actor, params.code, file, fields),
 })
