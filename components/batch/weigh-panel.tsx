@@ -142,9 +142,7 @@ export function WeighPanel({ work, line, next, balance, draft, now, onDraft, onK
         </div>
       </div>
       <div className="flex flex-col gap-3">
-        {isBench ? (
-          <NumberPad onKey={(key) => onDraft({ [pad]: afterKey(draft[pad], key) })} />
-        ) : null}
+        {isBench ? <NumberPad onKey={(key) => onDraft({ [pad]: afterKey(draft[pad], key) })} /> : null}
         <Button type="submit" kind={verdict?.isWithin ? 'primary' : 'secondary'} busy={isSending} why={why}>
           {isCorrection
             ? 'Keep the correction'

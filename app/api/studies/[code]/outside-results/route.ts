@@ -16,6 +16,5 @@ export const POST = upload({
   maxBytes: maxDocumentBytes,
   types: documentTypes,
   fields: outsideFields,
-  handler: ({ db, actor, params, file, fields, now }) =>
-    addOutsideResult(db, actor, params.code, file, fields),
+  handler: ({ db, actor, params, file, fields }) => addOutsideResult(db, actor, params.code, file, fields),
 })
