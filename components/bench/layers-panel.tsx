@@ -90,7 +90,7 @@ export function LayersPanel({ jar, entry }: { jar: BenchJarPage; entry: JarEntry
 function Layer({ entry, tab }: { entry: JarEntry; tab: FieldTab }) {
   const isHere = entry.at === tab.key
   return (
-    <div className="flex flex-wrap items-center justify-between gap-3">
+    <div className="flex items-center justify-between gap-3 beside:flex-wrap">
       <button
         type="button"
         onClick={() => entry.goTo(tab.key)}

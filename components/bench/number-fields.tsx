@@ -40,9 +40,9 @@ export function NumberFields({ jar, entry, group, here }: Props) {
           <Computed slot={slot} text={here.text} value={verdict.value} isChanged={entry.isChanged(slot)} />
         ) : null}
       </p>
+      <VerdictLines verdict={verdict} />
       <LastValues field={field} />
       <FieldBand field={field} now={verdict.state === 'value' ? verdict.value : null} width={440} />
-      <VerdictLines verdict={verdict} />
     </div>
   )
 }

@@ -26,7 +26,7 @@ export function PaperSwitch({ paper }: { paper: ReturnType<typeof usePaper> }) {
     return (
       <button
         type="button"
-        className="ml-4 mr-auto min-h-11 self-start text-17 underline underline-offset-4 sm:ml-7"
+        className="ml-4 mr-auto min-h-16 self-start text-17 underline underline-offset-4 sm:ml-7"
         onClick={() => setPaper({ isOn: true })}
       >
         From paper

@@ -40,7 +40,8 @@ function Bar({ save, outbox, onOpen, onChange }: Props & { save: LastSave }) {
       if (waiting) await outbox.drop(waiting)
       else await send(pullKeys.undo(jar.pullJarId), 'POST', { readings: save.readings })
       // A reading's id belongs to what was voided; what is typed on gets ids of its own.
-      drafts?.change(save.draftKey, () => ({ ...save.draft, ids: {}, confirmed: [] }))
+      const { at: _at, ...typed } = save.draft
+      drafts?.change(save.draftKey, () => ({ ...typed, ids: {}, confirmed: [] }))
       if (!waiting)
         await mutate(benchKeys.jar(jar.code), fetcher(benchKeys.jar(jar.code)), { revalidate: false })
       setLastSave(null)

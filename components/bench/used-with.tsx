@@ -7,7 +7,7 @@ import { conditionsUsed, type Slot } from '@/components/bench/draft'
 import type { JarEntry } from '@/components/bench/use-jar-entry'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 import type { EntryDetail } from '@/lib/reading/schema/entry'
-import { dayText } from '@/lib/report/rules'
+import { shortDay } from '@/lib/report/rules'
 
 type Props = { jar: BenchJarPage; entry: JarEntry; slot: Slot }
 
@@ -69,7 +69,7 @@ function stateOf({ isOverdue, dueOn, result }: BenchJarPage['instruments'][numbe
   if (dueOn === null) return { isBad: true, says: 'never calibrated' }
   return isOverdue
     ? { isBad: true, says: 'calibration overdue' }
-    : { isBad: false, says: `good until ${dayText(dueOn)}` }
+    : { isBad: false, says: `good until ${shortDay(dueOn)}` }
 }
 
 function conditionsText(slot: Slot, used: EntryDetail): string {

@@ -27,7 +27,7 @@ class Count {
   async takePhoto() {
     this.interactions += 1
     await this.page
-      .getByLabel('Take a photo')
+      .getByLabel('Photo files')
       .first()
       .setInputFiles(await photo())
   }
