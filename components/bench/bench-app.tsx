@@ -1,8 +1,9 @@
 'use client'
 
 import { usePathname } from 'next/navigation'
+import { Suspense, useEffect } from 'react'
 import { BenchDay } from '@/components/bench/bench-day'
-import { JarScreen } from '@/components/bench/jar-screen'
+import { JarScreen, loadAhead } from '@/components/bench/later'
 import { UndoBar } from '@/components/bench/undo-bar'
 import { useBenchData } from '@/components/device/use-bench-data'
 import { useRememberPerson, type BenchPerson } from '@/components/device/last-person'
@@ -18,6 +19,7 @@ export function BenchApp({ person }: { person: BenchPerson }) {
   const { bench, refresh } = useBenchData(code)
   const outbox = useOutbox(refresh)
   useRememberPerson(person)
+  useEffect(loadAhead, [])
 
   if (!bench)
     return (
@@ -31,16 +33,18 @@ export function BenchApp({ person }: { person: BenchPerson }) {
       {code === null ? (
         <BenchDay bench={bench} person={person} outbox={outbox} onOpen={openJar} onChange={refresh} />
       ) : (
-        <JarScreen
-          key={code}
-          code={code}
-          bench={bench}
-          person={person}
-          outbox={outbox}
-          onOpen={openJar}
-          onWalk={openWalk}
-          onChange={refresh}
-        />
+        <Suspense fallback={<p role="status">The jar is being looked up.</p>}>
+          <JarScreen
+            key={code}
+            code={code}
+            bench={bench}
+            person={person}
+            outbox={outbox}
+            onOpen={openJar}
+            onWalk={openWalk}
+            onChange={refresh}
+          />
+        </Suspense>
       )}
     </>
   )

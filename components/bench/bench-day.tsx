@@ -1,9 +1,8 @@
 'use client'
 
-import { useState } from 'react'
-import { ByInstrument } from '@/components/bench/by-instrument'
+import { Suspense, useState } from 'react'
+import { ByInstrument, FindJar } from '@/components/bench/later'
 import { DayHead } from '@/components/bench/day-head'
-import { FindJar } from '@/components/bench/find-jar'
 import { HandOver } from '@/components/bench/hand-over'
 import { HandoverNotes } from '@/components/bench/handover-notes'
 import { codesKept } from '@/components/bench/kept-jars'
@@ -71,7 +70,9 @@ export function BenchDay({ bench, person, outbox, onOpen, onChange }: Props) {
         </div>
       ) : null}
       {isByInstrument ? (
-        <ByInstrument {...{ bench, person, outbox, onOpen, onChange, called }} onCalled={setCalled} />
+        <Suspense fallback={<p className="flex-1 p-5">The instruments are being looked up.</p>}>
+          <ByInstrument {...{ bench, person, outbox, onOpen, onChange, called }} onCalled={setCalled} />
+        </Suspense>
       ) : (
         <ol className="mt-3 flex-1">
           {bench.stations.map((station) => (
@@ -98,20 +99,22 @@ export function BenchDay({ bench, person, outbox, onOpen, onChange }: Props) {
         >
           <ScanMark /> Scan a label
         </button>
-        <button type="button" className="btn" onClick={() => setFinding('typing')}>
+        <button type="button" data-kind="secondary" className="btn" onClick={() => setFinding('typing')}>
           Type a code
         </button>
       </div>
       {finding ? (
-        <FindJar
-          bench={bench}
-          isScanning={finding === 'scanning'}
-          onOpen={(code) => {
-            setFinding(null)
-            openJar(code)
-          }}
-          onClose={() => setFinding(null)}
-        />
+        <Suspense fallback={null}>
+          <FindJar
+            bench={bench}
+            isScanning={finding === 'scanning'}
+            onOpen={(code) => {
+              setFinding(null)
+              openJar(code)
+            }}
+            onClose={() => setFinding(null)}
+          />
+        </Suspense>
       ) : null}
     </div>
   )
