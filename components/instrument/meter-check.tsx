@@ -6,7 +6,7 @@ import { Select } from '@/components/ui/select'
 import { bufferOf } from '@/lib/calibration/rules'
 import { lotDoubt } from '@/lib/lot/rules'
 import type { LotRow } from '@/lib/lot/queries'
-import { readDecimal } from '@/lib/number/rules'
+import { grouped, readDecimal } from '@/lib/number/rules'
 import { ScienceError } from '@/lib/science/guard'
 import { phSlope, type PhSlope } from '@/lib/science/ph-slope'
 
@@ -104,7 +104,7 @@ export function MeterCheck({ draft, lots, today, fields, onDraft }: Props) {
           <>
             <b className={fit.doubt ? 'text-alarm' : ''}>Slope {fit.efficiencyPercent.toFixed(1)} %</b> of the
             theoretical one, {fit.slopeMvPerPh.toFixed(2).replace('-', '−')} mV a pH; zero point{' '}
-            {fit.offsetMv.toFixed(1).replace('-', '−')} mV at pH 7.
+            {grouped(fit.offsetMv, 1)} mV at pH 7.
             {fit.doubt ? <span className="block text-alarm">{fit.doubt}.</span> : null}
           </>
         ) : (

@@ -162,9 +162,11 @@ function Cell({ of, entry, isCurrent, isAmended, timeZone }: CellProps) {
       return (
         <td className={`text-right whitespace-nowrap ${isCurrent ? 'font-600' : ''}`}>
           <span className={old}>
-            {entry.isVoid || entry.value === null
+            {entry.isVoid
               ? 'void'
-              : shownWithUnit(attributeOf(entry.attribute, entry), entry.value)}
+              : entry.value === null
+                ? (entry.word ?? entry.typed)
+                : shownWithUnit(attributeOf(entry.attribute, entry), entry.value)}
           </span>
           {isCurrent && isAmended ? <span className="sr-only"> counts now</span> : null}
         </td>

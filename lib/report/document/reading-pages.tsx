@@ -53,9 +53,15 @@ function Row({ r, content }: { r: ReadingEvidence; content: CaseContent }) {
       <Text style={{ width: 80, paddingLeft: 10 }}>{minuteText(r.measuredAt, content.lab.timeZone)}</Text>
       <Text style={{ flex: 1 }}>
         {r.by}
-        {r.state === 'counts' ? '' : `; ${r.state}`}
+        {stateOf(r)}
         {r.reason ? `: ${r.reason}` : ''}
       </Text>
     </View>
   )
+}
+
+/** What took the place of another is marked as the one that stands; an untouched reading needs no word. */
+function stateOf({ state, reason }: ReadingEvidence): string {
+  if (state === 'counts') return reason ? '; stands now' : ''
+  return state === 'does not count' && reason ? '; stands now, does not count' : `; ${state}`
 }

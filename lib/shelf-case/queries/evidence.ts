@@ -93,7 +93,11 @@ export async function loadEvidence(db: Db | Trx, actor: Actor, studyId: string) 
     .where('r.batchId', 'in', ids)
     .orderBy('r.measuredAt')
     .orderBy('r.attribute')
+    .orderBy('r.batchId')
+    .orderBy('j.code')
     .orderBy('r.replicate')
+    // A correction keeps the time of what it corrects, and stands right after it.
+    .orderBy('r.recordedAt')
     .orderBy('r.id')
     .execute()
   const flags = await db
