@@ -84,6 +84,7 @@ export function BenchDay({ bench, person, outbox, onOpen, onChange }: Props) {
               onPick={() => setPicked(station.id)}
               onOpen={onOpen}
               now={now}
+              day={bench.today}
             />
           ))}
         </ol>

@@ -8,6 +8,7 @@ import { ReadingPhoto } from '@/components/photo/reading-photo'
 import { Button } from '@/components/ui/button'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 import type { BenchJar } from '@/lib/bench/queries/bench-jar'
+import { placeOf } from '@/lib/jar/rules/at-hand'
 import { attributeName } from '@/lib/reading/schema/attributes'
 import { dayText } from '@/lib/report/rules'
 import { dayIn } from '@/lib/study/rules/calendar'
@@ -120,7 +121,8 @@ function headline(jar: BenchJarPage, mayLog: boolean): string {
   if (jar.state === 'done')
     return `Read${jar.closedBy ? ` by ${jar.closedBy.name}` : ''}${jar.closedAt ? `, ${dayText(jar.closedAt)}` : ''}`
   if (!jar.isStudyRunning) return `Study ${jar.study.code} is closed; nothing is asked of this jar.`
-  if (jar.isEarly) return `Not due yet: its window opens on ${dayText(jar.windowFrom)}.`
+  if (jar.isEarly)
+    return `Not due yet: due on ${dayText(jar.dueOn)}, and read from ${dayText(jar.windowFrom)}. It belongs ${placeOf({ ...jar, stationName: jar.station.name })}.`
   return mayLog
     ? 'Nothing is asked of it now.'
     : `Due by ${dayText(jar.windowTo)}. A technician or formulator reads it.`

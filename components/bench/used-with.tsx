@@ -64,7 +64,8 @@ export function UsedWith({ jar, entry, slot }: Props) {
   )
 }
 
-function stateOf({ isOverdue, dueOn, result }: BenchJarPage['instruments'][number]) {
+function stateOf({ isOverdue, dueOn, result, hasFailedCheck }: BenchJarPage['instruments'][number]) {
+  if (hasFailedCheck) return { isBad: true, says: 'daily check failed' }
   if (result === 'doubtful') return { isBad: true, says: 'calibration doubtful' }
   if (dueOn === null) return { isBad: true, says: 'never calibrated' }
   return isOverdue

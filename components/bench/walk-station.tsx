@@ -1,4 +1,5 @@
 import { JarRow } from '@/components/bench/jar-row'
+import { LargeCaution, useCaution } from '@/components/bench/station-caution'
 import { TinyJar } from '@/components/bench/tiny-jar'
 import { heatLine } from '@/components/marks/heat'
 import { CycleAlarm, StationActs } from '@/components/station/station-acts'
@@ -14,10 +15,11 @@ type StationProps = {
   onPick: () => void
   onOpen: (code: string) => void
   now: number
+  day: string
 }
 
 /** One place of the walk: its jars on its line, and unfolded each with what is asked of it. */
-export function WalkStation({ station, isOpen, kept, onPick, onOpen, now }: StationProps) {
+export function WalkStation({ station, isOpen, kept, onPick, onOpen, now, day }: StationProps) {
   const celsius = station.kind === 'freeze-thaw' ? null : station.temperatureC
   const line = heatLine(celsius ?? station.cycleLowC ?? -10)
   const open = station.jars.filter((j) => j.state === 'due' || j.state === 'resting')
@@ -73,9 +75,7 @@ export function WalkStation({ station, isOpen, kept, onPick, onOpen, now }: Stat
       </button>
       {isOpen ? (
         <div className="px-4 sm:px-5">
-          <p className="py-2 text-17">
-            {station.name}. {station.caution ? <b>{station.caution}</b> : null}
-          </p>
+          <StationCaution station={station} day={day} />
           {station.downtime ? (
             <p className="pb-2 text-17">
               Out of use {periodText(station.downtime)}: {station.downtime.reason}
@@ -90,6 +90,18 @@ export function WalkStation({ station, isOpen, kept, onPick, onOpen, now }: Stat
         </div>
       ) : null}
     </li>
+  )
+}
+
+function StationCaution({ station: { id, name, caution }, day }: Pick<StationProps, 'station' | 'day'>) {
+  const { isNew, noteRead } = useCaution({ stationId: id, day, caution })
+  return (
+    <>
+      <p className="py-2 text-17">
+        {name}. {caution && !isNew ? <b>{caution}</b> : null}
+      </p>
+      {isNew ? <LargeCaution caution={caution} onRead={noteRead} /> : null}
+    </>
   )
 }
 

@@ -1,10 +1,15 @@
+import { createElement } from 'react'
+import { renderToStaticMarkup } from 'react-dom/server'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { GET as day } from '@/app/api/bench/route'
 import { GET as jarPage } from '@/app/api/bench/[code]/route'
+import { POST as mishap } from '@/app/api/jars/[code]/mishaps/route'
 import { POST as log } from '@/app/api/pulls/[id]/readings/route'
 import { POST as open } from '@/app/api/pulls/[id]/open/route'
+import { DonePanel } from '@/components/bench/done-panel'
 import type { BenchJar } from '@/lib/bench/queries/bench-jar'
 import type { Bench } from '@/lib/bench/queries/today'
+import { newId } from '@/lib/db/id'
 import {
   askedJars,
   benchStudy,
@@ -134,15 +139,74 @@ describe("a jar's own screen", () => {
     const unknown = await call(jarPage, { cookie: technician.cookie, params: { code: 'ZZZZZ' } })
     expect(unknown.status).toBe(404)
     expect(unknown.body.error.sentence).toMatch(/No jar has the code ZZZZZ/)
-    const retain = await t.db
-      .selectFrom('jar')
-      .select('code')
-      .where('studyId', '=', study.studyId)
-      .where('kind', '=', 'retain')
-      .executeTakeFirstOrThrow()
-    const kept = await call(jarPage, { cookie: technician.cookie, params: { code: retain.code } })
-    expect(kept.status).toBe(404)
-    expect(kept.body.error.sentence).toMatch(/retain jar/)
+  })
+
+  describe('of a wrong jar says which one it is and where it belongs', () => {
+    const own = () =>
+      t.db
+        .selectFrom('jar')
+        .innerJoin('study', 'study.id', 'jar.studyId')
+        .innerJoin('batch', 'batch.id', 'jar.batchId')
+        .leftJoin('studyStation as ss', 'ss.id', 'jar.studyStationId')
+        .leftJoin('station', 'station.id', 'jar.stationId')
+        .select(['jar.id', 'jar.code', 'jar.shelf', 'jar.place', 'station.name as station'])
+        .select(['study.code as study', 'study.title', 'batch.code as batch', 'ss.temperatureC'])
+        .where('jar.studyId', '=', study.studyId)
+        .orderBy('jar.code')
+    const says = async (code: string) => {
+      const { status, body } = await call(jarPage, { cookie: technician.cookie, params: { code } })
+      expect(status).toBe(404)
+      return body.error.sentence as string
+    }
+
+    it('a spare at its place', async () => {
+      const jar = await own()
+        .where('jar.kind', '=', 'spare')
+        .where('ss.temperatureC', '=', 45)
+        .executeTakeFirstOrThrow()
+      expect(await says(jar.code)).toBe(
+        `Jar 45·${jar.code} is a spare of batch ${jar.batch} in study ${jar.study}, ${jar.title}. It belongs on shelf ${jar.shelf}, place ${jar.place} of ${jar.station}, and is read only where a repeat or a missing jar calls for it.`,
+      )
+    })
+
+    it('a retain jar, and one that was opened at the start', async () => {
+      const retain = await own().where('jar.kind', '=', 'retain').executeTakeFirstOrThrow()
+      expect(await says(retain.code)).toMatch(
+        /^Jar \w{5} is a retain jar of batch .*\. It belongs in the retain/,
+      )
+      const first = await own()
+        .where('jar.state', '=', 'spent')
+        .where('jar.studyStationId', 'is', null)
+        .executeTakeFirstOrThrow()
+      expect(await says(first.code)).toMatch(/is a measuring jar .*\. It was opened and is spent\.$/)
+    })
+
+    it('a spare that broke, with the day', async () => {
+      const spare = await own()
+        .where('jar.kind', '=', 'spare')
+        .where('ss.temperatureC', '=', 25)
+        .executeTakeFirstOrThrow()
+      const now = new Date().toISOString()
+      const body = { id: newId(), kind: 'broken', reason: 'fell', claimedAt: now, deviceNow: now }
+      const noted = await call(mishap, { cookie: technician.cookie, params: { code: spare.code }, body })
+      expect(noted.status, JSON.stringify(noted.body)).toBe(200)
+      expect(await says(spare.code)).toMatch(/\. It was noted as broken on \d+ \w{3} \d{4}\.$/)
+    })
+
+    it('one whose day has not come opens, and gives its next day and its place', async () => {
+      const next = jarAt(jars, 45, 3)
+      const { body } = await call(jarPage, { cookie: technician.cookie, params: { code: next.code } })
+      expect(body).toMatchObject({ isEarly: true, shelf: expect.any(Number), place: expect.any(Number) })
+      const shown = renderToStaticMarkup(
+        createElement(DonePanel, {
+          ...{ jar: body, personId: '', mayLog: true, next: null },
+          ...{ onChange() {}, onWalk() {}, onOpen() {} },
+        }),
+      )
+      expect(shown).toContain(
+        `It belongs on shelf ${body.shelf}, place ${body.place} of ${body.station.name}.`,
+      )
+    })
   })
 })
 

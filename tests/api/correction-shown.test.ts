@@ -122,25 +122,28 @@ describe('R02: a correction hides nothing: three values in order, the current on
       ])
     })
 
-    it.each([{}, { sort: 'measured' }, { sort: '-measured' }])('in the CSV, sorted by %o', async (query) => {
-      const { response } = await call(file, {
-        cookie: qa.cookie,
-        params: { code: study.code },
-        query: { format: 'csv', changed: 'corrected or voided', ...query },
-      })
-      expect(response.status).toBe(200)
-      const [head, ...lines] = (await response.text()).replace('\uFEFF', '').trim().split('\r\n')
-      const [typed, counts] = ['as typed', 'counts'].map((title) => head!.split(',').indexOf(title))
-      expect(
-        lines
-          .map((line) => line.replace('"5,44"', '5;44').split(','))
-          .map((cells) => [cells[typed!], cells[counts!]]),
-      ).toEqual([
-        ['5.2', 'superseded'],
-        ['5.46', 'superseded'],
-        ['5;44', 'now'],
-      ])
-    })
+    it.each<Record<string, string>>([{}, { sort: 'measured' }, { sort: '-measured' }])(
+      'in the CSV, sorted by %o',
+      async (query) => {
+        const { response } = await call(file, {
+          cookie: qa.cookie,
+          params: { code: study.code },
+          query: { format: 'csv', changed: 'corrected or voided', ...query },
+        })
+        expect(response.status).toBe(200)
+        const [head, ...lines] = (await response.text()).replace('\uFEFF', '').trim().split('\r\n')
+        const [typed, counts] = ['as typed', 'counts'].map((title) => head!.split(',').indexOf(title))
+        expect(
+          lines
+            .map((line) => line.replace('"5,44"', '5;44').split(','))
+            .map((cells) => [cells[typed!], cells[counts!]]),
+        ).toEqual([
+          ['5.2', 'superseded'],
+          ['5.46', 'superseded'],
+          ['5;44', 'now'],
+        ])
+      },
+    )
 
     it('in the PDF of the case', async () => {
       const proposal = {

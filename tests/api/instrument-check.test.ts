@@ -1,5 +1,6 @@
 import { sql } from 'kysely'
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest'
+import { GET as benchJarRoute } from '@/app/api/bench/[code]/route'
 import { POST as calibrateRoute } from '@/app/api/calibrations/route'
 import { POST as checkRoute } from '@/app/api/instruments/[id]/checks/route'
 import { GET as instrumentRoute, PUT as changeRoute } from '@/app/api/instruments/[id]/route'
@@ -112,6 +113,33 @@ describe('daily checks', () => {
     await check(6.87, { claimedAt: weeks(1.5) })
     const good = await readPh(2)
     expect(good.readings.flatMap((one: { doubts: object[] }) => one.doubts)).toEqual([])
+  })
+
+  it('a failed one stands at the instrument on the Bench, until a good check or calibration comes after it', async () => {
+    const { code } = jarAt(await askedJars(t.db, study.studyId), 25, 1)
+    const hasFailed = async () => {
+      const { body } = await call(benchJarRoute, { cookie: mada.cookie, params: { code } })
+      const instruments = body.instruments as { id: string; hasFailedCheck: boolean }[]
+      return instruments.find((one) => one.id === study.meterId)?.hasFailedCheck
+    }
+    expect(await hasFailed()).toBe(false)
+    await check(7.2, { claimedAt: weeks(1), isConfirmed: true })
+    expect(await hasFailed()).toBe(true)
+    await check(6.87, { claimedAt: weeks(1.5) })
+    expect(await hasFailed()).toBe(false)
+    await check(7.2, { claimedAt: weeks(2), isConfirmed: true })
+    expect(await hasFailed()).toBe(true)
+    await t.owner.transaction().execute(async (trx) => {
+      await sql`select set_config('app.actor_id', ${manager.actor.personId}, true)`.execute(trx)
+      await trx
+        .insertInto('calibration')
+        .values({
+          ...{ id: newId(), instrumentId: study.meterId, calibratedAt: weeks(2.5), dueOn: '2099-01-01' },
+          ...{ result: 'good', recordedBy: manager.actor.personId },
+        })
+        .execute()
+    })
+    expect(await hasFailed()).toBe(false)
   })
 
   it('a bad check says first what it reaches, then doubts what was read since the last good one, as rows of their own', async () => {

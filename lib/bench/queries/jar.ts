@@ -5,10 +5,10 @@ import { refuse } from '@/lib/http/errors'
 import { doubtsOf } from '@/lib/reading/queries/doubts'
 import { readJarCode } from '@/lib/jar/rules/code'
 import type { PhotoLinesOfReading } from '@/lib/reading/schema/photo-lines'
-import { spokenDay } from '@/lib/study/rules/calendar'
 import { jarsToRead, type BenchJarRow } from './jars'
 import { getLabDay, type LabDay } from './lab-day'
 import { benchJar } from './bench-jar'
+import { sayWhyNotToRead } from './why-not-to-read'
 import { listCurrentSeries, listInitialMeans, listLastReadings } from './values'
 
 export type BenchJarPage = Awaited<ReturnType<typeof getBenchJar>>
@@ -25,7 +25,7 @@ export async function getBenchJar(db: Db, _actor: Actor, typedCode: string) {
     .orderBy('pull.dueOn', 'desc')
     .limit(1)
     .executeTakeFirst()
-  if (!row) throw refuse.notFound(await whyNotToRead(db, code))
+  if (!row) throw refuse.notFound(await sayWhyNotToRead(db, code))
   const only = { batchId: row.batchId, studyStationId: row.studyStationId }
   const [page] = await listJarPages(db, [row], { zone, now, today }, only)
   return { ...page!, instruments: await listUsableInstruments(db, today) }
@@ -111,6 +111,15 @@ export async function listUsableInstruments(db: Db, today: string) {
     )
     .select(['instrument.id', 'instrument.code', 'instrument.kind', 'instrument.name'])
     .select(['newest.dueOn', 'newest.result'])
+    // As readings are doubted: the last daily check was bad, and no good calibration came after it.
+    .select(
+      sql<boolean>`coalesce((select event.is_check and event.result = 'doubtful' from (
+          select true as is_check, result, checked_at as at from instrument_check where instrument_id = instrument.id
+          union all
+          select false, result, calibrated_at from calibration
+            where instrument_id = instrument.id and result = 'good') event
+        order by event.at desc limit 1), false)`.as('hasFailedCheck'),
+    )
     .select((eb) =>
       eb.ref('instrument.spindles').$castTo<{ name: string; constant: number }[]>().as('spindles'),
     )
@@ -118,16 +127,4 @@ export async function listUsableInstruments(db: Db, today: string) {
     .orderBy('instrument.code')
     .execute()
   return rows.map((row) => ({ ...row, isOverdue: row.dueOn === null || row.dueOn < today }))
-}
-
-async function whyNotToRead(db: Db, code: string): Promise<string> {
-  const jar = await db
-    .selectFrom('jar')
-    .innerJoin('study', 'study.id', 'jar.studyId')
-    .select(['jar.code', 'jar.kind', 'jar.state', 'study.code as studyCode', 'study.startedOn'])
-    .where('jar.code', '=', code)
-    .executeTakeFirst()
-  if (!jar) return `No jar has the code ${code.slice(0, 20)}. Read the label again.`
-  const since = `study ${jar.studyCode}, since ${spokenDay(jar.startedOn)}`
-  return `Jar ${jar.code} is a ${jar.kind} jar (${jar.state}) of ${since}; nothing is asked of it.`
 }
