@@ -35,24 +35,32 @@ async function keepShell() {
   const cache = await caches.open(cacheName)
   const answer = await fetch(shell, { credentials: 'omit', cache: 'reload' })
   if (!answer.ok) throw new Error('The shell page did not come.')
-  const text = await answer.clone().text()
-  const files = new Set(text.match(/\/_next\/static\/[^"'\\\s<>()]+/g) ?? [])
-  // Flight data names scripts without the folder's own prefix.
-  for (const name of text.match(/static\/chunks\/[^"'\\\s<>()]+/g) ?? []) files.add(`/_next/${name}`)
-  await Promise.all([...files, '/mark.svg'].map((file) => keepFile(cache, file)))
+  const files = filesIn(await answer.clone().text())
+  const known = new Set(files)
+  await Promise.all([...files, '/mark.svg'].map((file) => keepFile(cache, file, known)))
   // Last: where a file is missing there is no shell either. Its own headers go along, with the nonce of its scripts.
   await cache.put(shell, answer)
 }
 
-async function keepFile(cache, address) {
-  if (await cache.match(address)) return
+/** A file and whatever it names: a script what it loads later, a style its fonts. */
+async function keepFile(cache, address, known) {
   const answer = await fetch(address)
-  if (!answer.ok) return
+  if (!answer.ok) throw new Error(`${address} did not come.`)
   await cache.put(address, answer.clone())
-  if (!address.endsWith('.css')) return
-  const fonts = (await answer.text()).match(/\/_next\/static\/media\/[^"')\s]+/g) ?? []
-  await Promise.all(fonts.map((font) => keepFile(cache, font)))
+  if (!/\.(css|js)$/.test(address)) return
+  const more = filesIn(await answer.text()).filter((file) => !known.has(file))
+  more.forEach((file) => known.add(file))
+  await Promise.all(more.map((file) => keepFile(cache, file, known)))
 }
+
+/** Scripts name others without the folder's own prefix, styles their fonts from where they lie. */
+const filesIn = (text) => [
+  ...new Set(
+    [...text.matchAll(/(?:static\/(?:chunks|media)|\.\.\/media)\/[\w.~-]+\.\w+/g)].map(([name]) =>
+      name.replace(/^(?:static|\.\.)\//, '/_next/static/'),
+    ),
+  ),
+]
 
 /** The build before stays until the next one: a page that is still open may want its files. */
 async function dropOldCaches() {

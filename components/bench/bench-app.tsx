@@ -8,6 +8,7 @@ import { UndoBar } from '@/components/bench/undo-bar'
 import { useBenchData } from '@/components/device/use-bench-data'
 import { useRememberPerson, type BenchPerson } from '@/components/device/last-person'
 import { useOutbox } from '@/components/device/use-outbox'
+import { useReady } from '@/components/device/use-ready'
 
 /**
  * The walk and the jars are one page: going from jar to jar needs no network, because the day's jars were
@@ -16,7 +17,8 @@ import { useOutbox } from '@/components/device/use-outbox'
 export function BenchApp({ person }: { person: BenchPerson }) {
   const path = usePathname()
   const code = path.startsWith('/bench/') ? decodeURIComponent(path.slice('/bench/'.length)) : null
-  const { bench, refresh } = useBenchData(code)
+  const { bench, areDaysKept, refresh } = useBenchData(code)
+  const isReady = useReady(areDaysKept)
   const outbox = useOutbox(refresh)
   useRememberPerson(person)
   useEffect(loadAhead, [])
@@ -31,7 +33,14 @@ export function BenchApp({ person }: { person: BenchPerson }) {
     <>
       <UndoBar outbox={outbox} onOpen={openJar} onChange={refresh} />
       {code === null ? (
-        <BenchDay bench={bench} person={person} outbox={outbox} onOpen={openJar} onChange={refresh} />
+        <BenchDay
+          bench={bench}
+          person={person}
+          outbox={outbox}
+          isReady={isReady}
+          onOpen={openJar}
+          onChange={refresh}
+        />
       ) : (
         <Suspense fallback={<p role="status">The jar is being looked up.</p>}>
           <JarScreen

@@ -21,12 +21,13 @@ type Props = {
   bench: Bench
   person: BenchPerson
   outbox: OutboxOnScreen
+  isReady: boolean
   onOpen: (code: string) => void
   onChange: () => void
 }
 
 /** Today, in the order one walks the stations: jar by jar along the shelf, or one instrument after the other. */
-export function BenchDay({ bench, person, outbox, onOpen, onChange }: Props) {
+export function BenchDay({ bench, person, outbox, isReady, onOpen, onChange }: Props) {
   const first = bench.stations.find((s) => s.counts.due + s.counts.resting > 0)?.id ?? null
   const [picked, setPicked] = useState<string | null>(null)
   const [finding, setFinding] = useState<'scanning' | 'typing' | null>(null)
@@ -41,7 +42,7 @@ export function BenchDay({ bench, person, outbox, onOpen, onChange }: Props) {
   const kept = codesKept(outbox.items)
   return (
     <div className="mx-auto flex min-h-[calc(100dvh-64px)] max-w-[820px] flex-col">
-      <DayHead bench={bench} outbox={outbox} />
+      <DayHead bench={bench} outbox={outbox} isReady={isReady} />
       <HandoverNotes notes={bench.notes} mayRead={person.mayLog} onChange={onChange} />
       {jar.error ? (
         <div

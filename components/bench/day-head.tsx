@@ -4,8 +4,15 @@ import type { OutboxOnScreen } from '@/components/device/use-outbox'
 import type { Bench } from '@/lib/bench/queries/today'
 import { dayText } from '@/lib/report/rules'
 
+type Props = {
+  bench: Bench
+  outbox: OutboxOnScreen
+  /** For going on without network. */
+  isReady: boolean
+}
+
 /** The day as a finding: how far it is, what is late, when the next jars come. */
-export function DayHead({ bench, outbox }: { bench: Bench; outbox: OutboxOnScreen }) {
+export function DayHead({ bench, outbox, isReady }: Props) {
   const { total, done, missed, overdue, resting } = bench.counts
   const left = total - done - missed
   const ready = bench.stations.flatMap((s) => s.jars).filter((jar) => jar.isReady).length
@@ -47,6 +54,9 @@ export function DayHead({ bench, outbox }: { bench: Bench; outbox: OutboxOnScree
           ) : null}
         </div>
         <div className="flex flex-wrap items-center gap-3">
+          {isReady && outbox.isOnline && outbox.items.length === 0 ? (
+            <p className="order-last text-17 text-soft sm:order-none">Ready without network</p>
+          ) : null}
           <Tray outbox={outbox} />
           <LightSwitch />
         </div>

@@ -3,6 +3,7 @@
 import { useEffect } from 'react'
 import { useDevice } from './device-context'
 import { rememberLastPerson } from './last-person'
+import { workerAddress } from './use-ready'
 
 /** Stands once on every page of the notebook: what waits goes out by itself, wherever its author is. */
 export function DeviceKeeper({ person }: { person: { personId: string; initials: string } }) {
@@ -32,11 +33,9 @@ export function DeviceKeeper({ person }: { person: { personId: string; initials:
     rememberLastPerson({ personId, initials })
     // The browser may ask its user, or say no; then it throws things away only when it runs out of room.
     void navigator.storage?.persist?.().catch(() => undefined)
-    // A build has a worker of its own, which brings its own shell; in development files change under their names.
+    // In development files change under their names.
     if (process.env.NODE_ENV === 'production')
-      void navigator.serviceWorker
-        ?.register(`/sw.js?build=${process.env['STILLSTAND_BUILD']}`)
-        .catch(() => undefined)
+      void navigator.serviceWorker?.register(workerAddress).catch(() => undefined)
   }, [personId, initials])
 
   return null

@@ -1,6 +1,6 @@
 'use client'
 
-import { useCallback, useEffect, useRef } from 'react'
+import { useCallback, useEffect, useRef, useState } from 'react'
 import useSWR, { useSWRConfig } from 'swr'
 import type { BenchDays } from '@/lib/bench/queries/days'
 import type { Bench } from '@/lib/bench/queries/today'
@@ -22,6 +22,7 @@ export function useBenchData(openCode: string | null) {
   const { cache, fallback, mutate } = useSWRConfig()
   const revision = useRef<string | null>(null)
   const daysReadAt = useRef(0)
+  const [areDaysKept, setDaysKept] = useState(false)
   const { data: bench } = useSWR<Bench>(benchKeys.today, null)
   const code = useRef(openCode)
   useEffect(() => {
@@ -55,7 +56,10 @@ export function useBenchData(openCode: string | null) {
     daysReadAt.current = Date.now()
     showPages(days, true)
     await showBench(read)
-    await device.store.keepData('days', { readAt: read.now, data: days }).catch(() => undefined)
+    await device.store
+      .keepData('days', { readAt: read.now, data: days })
+      .then(() => setDaysKept(true))
+      .catch(() => undefined)
   }, [device, showBench, showPages])
 
   const readBench = useCallback(async () => {
@@ -116,5 +120,5 @@ export function useBenchData(openCode: string | null) {
     return () => clearInterval(timer)
   }, [device, ask, readBench])
 
-  return { bench, refresh: useCallback(() => void ask(readBench), [ask, readBench]) }
+  return { bench, areDaysKept, refresh: useCallback(() => void ask(readBench), [ask, readBench]) }
 }
