@@ -56,19 +56,21 @@ type AskProps = { refusal: ClientError; onConfirm: () => void; onAgain: () => vo
 /** A number that may be, but is unlikely: it is taken as a doubt, or typed again. */
 export function AskAgain({ refusal, onConfirm, onAgain, isBusy }: AskProps) {
   const sentences = [...new Set(Object.values(refusal.fields))]
+  const asked = Object.keys(refusal.fields)
+  const isOnlyOpen = asked.length > 0 && asked.every((key) => key.startsWith('missing.'))
   return (
     <Dialog
       isOpen
       onClose={onAgain}
-      title="Is it so?"
+      title={isOnlyOpen ? 'Not everything is read' : 'Is it so?'}
       density="bench"
       acts={
         <>
           <Button density="bench" onClick={onAgain}>
-            Type again
+            {isOnlyOpen ? 'Read it' : 'Type again'}
           </Button>
           <Button density="bench" kind="primary" busy={isBusy} onClick={onConfirm}>
-            It is so, keep it
+            {isOnlyOpen ? 'Leave it out, keep the rest' : 'It is so, keep it'}
           </Button>
         </>
       }
@@ -78,10 +80,12 @@ export function AskAgain({ refusal, onConfirm, onAgain, isBusy }: AskProps) {
           {sentence}
         </p>
       ))}
-      <p className="text-17 text-soft">
-        An unlikely value is kept as a doubt: it takes no part until a repeat settles it or someone sets the
-        doubt aside.
-      </p>
+      {isOnlyOpen ? null : (
+        <p className="text-17 text-soft">
+          An unlikely value is kept as a doubt: it takes no part until a repeat settles it or someone sets the
+          doubt aside.
+        </p>
+      )}
     </Dialog>
   )
 }

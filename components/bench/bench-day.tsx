@@ -86,13 +86,16 @@ export function BenchDay({ bench, person, outbox, isReady, onOpen, onChange }: P
               onOpen={onOpen}
               now={now}
               day={bench.today}
+              zone={bench.zone}
             />
           ))}
         </ol>
       )}
       <WeekLoad bench={bench} />
       {person.mayLog ? <HandOver bench={bench} now={now} onChange={onChange} /> : null}
-      <div className="sticky bottom-0 mt-3 flex gap-3 bg-ground px-4 pb-3 pt-3 sm:px-5">
+      <div
+        className={`mt-3 flex gap-3 bg-ground px-4 pb-3 pt-3 sm:px-5 ${isByInstrument ? '' : 'sticky bottom-0'}`}
+      >
         <button
           type="button"
           data-kind="primary"

@@ -108,7 +108,7 @@ function HandOverDialog({ bench, now, onChange, onClose }: Props & { onClose: ()
               className="flex flex-wrap justify-between gap-x-4 border-b border-hair py-2"
             >
               <b className="font-mono text-20">{jar.name}</b>
-              <span className="text-17">{unfinishedText(jar, now)}</span>
+              <span className="text-17">{unfinishedText(jar, now, bench.zone)}</span>
             </li>
           ))}
         </ul>
@@ -126,10 +126,10 @@ function HandOverDialog({ bench, now, onChange, onClose }: Props & { onClose: ()
   )
 }
 
-function unfinishedText(jar: BenchJar, now: number): string {
+function unfinishedText(jar: BenchJar, now: number, zone: string): string {
   const who = jar.openedBy ? `, ${jar.openedBy.initials}` : ''
   if (jar.read.length > 0) return `${readText(jar)} on record, the rest open${who}`
-  return `${restText(jar, now)}${who}`
+  return `${restText(jar, now, zone)}${who}`
 }
 
 function readText(jar: BenchJar): string {

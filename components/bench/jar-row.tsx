@@ -10,12 +10,14 @@ export function JarRow({
   isKept,
   onOpen,
   now,
+  zone,
 }: {
   jar: BenchJar
   isKept: boolean
   onOpen: (code: string) => void
   /** The server's time. */
   now: number
+  zone: string
 }) {
   const isOpen = !isKept && (jar.state === 'due' || jar.state === 'resting')
   const place = jar.shelf === null ? '' : `shelf ${jar.shelf}, place ${jar.place}`
@@ -50,7 +52,7 @@ export function JarRow({
             <span
               className={jar.isOverdue ? 'font-650 text-alarm' : jar.isLastDay ? 'font-700' : 'text-soft'}
             >
-              {windowText(jar, isKept, now)}
+              {windowText(jar, isKept, now, zone)}
             </span>
           </span>
           {jar.standsInFor ? (
@@ -78,22 +80,26 @@ function openText(jar: BenchJar): string {
   return `open: ${[jar.openedBy?.initials, what].filter(Boolean).join(', ')}`
 }
 
-function windowText(jar: BenchJar, isKept: boolean, now: number): string {
+function windowText(jar: BenchJar, isKept: boolean, now: number, zone: string): string {
   if (isKept) return 'kept on this tablet'
   if (jar.state === 'missed') return 'not read'
   if (jar.state === 'done') return `read${jar.closedBy ? ` by ${jar.closedBy.initials}` : ''}`
-  if (jar.state === 'resting') return restText(jar, now)
+  if (jar.state === 'resting') return restText(jar, now, zone)
   if (jar.isOverdue) return `was due by ${shortDay(jar.windowTo)}`
   return jar.isLastDay ? 'today only' : `by ${shortDay(jar.windowTo)}`
 }
 
 /** Counts down while it rests; whoever comes early is told when to come back. */
-export function restText(jar: BenchJar, now: number): string {
+export function restText(jar: BenchJar, now: number, zone: string): string {
   const until = jar.restUntil === null ? now : Date.parse(jar.restUntil)
   if (until <= now) return 'rested, ready'
   const minutes = Math.ceil((until - now) / 60_000)
   const rest = minutes < 60 ? `${minutes} min` : `${Math.floor(minutes / 60)} h ${minutes % 60} min`
-  const at = new Date(until).toLocaleTimeString('en-GB', { hour: '2-digit', minute: '2-digit' })
+  const at = new Date(until).toLocaleTimeString('en-GB', {
+    hour: '2-digit',
+    minute: '2-digit',
+    timeZone: zone,
+  })
   return `rests ${rest} more, until ${at}`
 }
 

@@ -42,8 +42,10 @@ export function LayersPanel({ jar, entry }: { jar: BenchJarPage; entry: JarEntry
           <b className="text-18">Separation</b>
           <span className="text-17">{bandText(slot.field)}</span>
         </p>
-        <div className="flex items-center justify-between gap-4">
-          <p className={`text-44 font-700 leading-none sm:text-64 ${isOut ? 'text-alarm' : ''}`}>
+        <div className="flex flex-wrap items-center justify-between gap-x-4">
+          <p
+            className={`whitespace-nowrap text-44 font-700 leading-none sm:text-64 ${isOut ? 'text-alarm' : ''}`}
+          >
             {verdict?.state === 'value' ? (
               <FigureDetails
                 figure={`${verdict.value.toFixed(1)} %`}
@@ -62,7 +64,7 @@ export function LayersPanel({ jar, entry }: { jar: BenchJarPage; entry: JarEntry
           <button
             type="button"
             onClick={() => entry.goTo('photo')}
-            className="min-h-16 text-17 underline underline-offset-4"
+            className="min-h-16 whitespace-nowrap text-17 underline underline-offset-4 beside:order-last"
           >
             {entry.draft.photoLines ? 'Measured on the photo' : 'Measure on a photo'}
           </button>

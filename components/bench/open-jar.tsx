@@ -11,7 +11,7 @@ import { LayersPanel } from '@/components/bench/layers-panel'
 import { MissDialog } from '@/components/bench/miss-dialog'
 import { nextJar } from '@/components/bench/next-jar'
 import { OverviewPanel } from '@/components/bench/overview-panel'
-import { PaperSwitch, usePaper } from '@/components/bench/paper-switch'
+import { PaperTime, usePaper } from '@/components/bench/paper-switch'
 import { RestPanel } from '@/components/bench/rest-panel'
 import { SlotTabs } from '@/components/bench/slot-tabs'
 import { StationLine } from '@/components/bench/station-line'
@@ -50,8 +50,12 @@ export function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }
       <div className="beside:hidden">
         <WalkStrip bench={bench} code={jar.code} />
       </div>
-      <StationLine jar={jar} onMiss={mayType ? () => setMissing(true) : null} />
-      {mayType ? <PaperSwitch paper={paper} /> : null}
+      <StationLine
+        jar={jar}
+        paper={mayType ? paper : null}
+        onMiss={mayType ? () => setMissing(true) : null}
+      />
+      {mayType ? <PaperTime paper={paper} /> : null}
       <JarNotices
         jar={jar}
         kept={entry.kept}

@@ -19,20 +19,23 @@ export function usePaper() {
   }
 }
 
+type Props = { paper: ReturnType<typeof usePaper> }
+
+export function PaperButton({ paper }: Props) {
+  return paper.isOn ? null : (
+    <button
+      type="button"
+      className="min-h-16 px-1 text-17 underline underline-offset-4"
+      onClick={() => paper.setPaper({ isOn: true })}
+    >
+      From paper
+    </button>
+  )
+}
+
 /** Readings typed in from a paper form stand at the time when they were really taken; the server keeps its own too. */
-export function PaperSwitch({ paper }: { paper: ReturnType<typeof usePaper> }) {
-  const { isOn, at, setPaper, why } = paper
-  if (!isOn) {
-    return (
-      <button
-        type="button"
-        className="ml-4 mr-auto min-h-16 self-start text-17 underline underline-offset-4 sm:ml-7"
-        onClick={() => setPaper({ isOn: true })}
-      >
-        From paper
-      </button>
-    )
-  }
+export function PaperTime({ paper: { isOn, at, setPaper, why } }: Props) {
+  if (!isOn) return null
   return (
     <div className="mx-4 mt-3 flex flex-wrap items-end gap-3 border-l-[5px] border-ink pl-3 sm:mx-7">
       <Field

@@ -1,10 +1,11 @@
 'use client'
 
+import { useEffect, useRef } from 'react'
 import useSWR from 'swr'
 import type { BenchPerson } from '@/components/device/last-person'
 import { FieldPanel } from '@/components/bench/field-panel'
 import { JarQuestions } from '@/components/bench/jar-questions'
-import { PaperSwitch, usePaper } from '@/components/bench/paper-switch'
+import { PaperButton, PaperTime, usePaper } from '@/components/bench/paper-switch'
 import { SlotTabs } from '@/components/bench/slot-tabs'
 import { useAwake } from '@/components/bench/use-awake'
 import { useJarEntry } from '@/components/bench/use-jar-entry'
@@ -33,10 +34,17 @@ type Props = {
 
 /** One attribute of one jar, with its place, so that the right one is taken from the shelf. */
 export function PartOfJar({ jar, step, ...rest }: Props) {
+  const paper = usePaper()
   const { data, error } = useSWR<BenchJarPage>(benchKeys.jar(jar.code), fetcher)
   const place = jar.shelf === null ? '' : `Shelf ${jar.shelf}, place ${jar.place}. `
+  const here = useRef<HTMLElement>(null)
+  // On a phone the number and the keys stand on the page together only where nothing stands above them.
+  useEffect(() => {
+    if (window.innerWidth < 640 && here.current!.getBoundingClientRect().bottom > window.innerHeight)
+      here.current!.scrollIntoView({ block: 'start' })
+  }, [data])
   return (
-    <section aria-label={`${step.label} of jar ${jar.name}`} className="mt-3 bg-typed pt-3">
+    <section ref={here} aria-label={`${step.label} of jar ${jar.name}`} className="mt-3 bg-typed pt-3">
       <div className="flex flex-wrap items-end justify-between gap-3 px-4 sm:px-5">
         <div>
           <h2 className="font-mono text-36 font-700 leading-none sm:text-48">{jar.name}</h2>
@@ -45,9 +53,12 @@ export function PartOfJar({ jar, step, ...rest }: Props) {
             {jar.standsAs}
           </p>
         </div>
-        <Button density="bench" onClick={rest.onSkip}>
-          {rest.hasNext ? 'Later' : 'Leave it open'}
-        </Button>
+        <div className="flex items-center gap-4">
+          {step.key === photoStep ? null : <PaperButton paper={paper} />}
+          <Button density="bench" onClick={rest.onSkip}>
+            {rest.hasNext ? 'Later' : 'Leave it open'}
+          </Button>
+        </div>
       </div>
       {data && data.pullJarId === jar.pullJarId ? (
         step.key === photoStep ? (
@@ -58,7 +69,7 @@ export function PartOfJar({ jar, step, ...rest }: Props) {
             </Button>
           </div>
         ) : (
-          <Part jar={data} step={step} {...rest} />
+          <Part jar={data} step={step} paper={paper} {...rest} />
         )
       ) : (
         <div className="p-5">
@@ -72,14 +83,14 @@ export function PartOfJar({ jar, step, ...rest }: Props) {
 function Part({
   jar,
   step,
+  paper,
   person,
   outbox,
   hasNext,
   onCalled,
   onDone,
-}: Omit<Props, 'jar'> & { jar: BenchJarPage }) {
+}: Omit<Props, 'jar'> & { jar: BenchJarPage; paper: ReturnType<typeof usePaper> }) {
   useAwake(true)
-  const paper = usePaper()
   const entry = useJarEntry({
     ...{ jar, outbox, mayType: true, part: step.key, paperAt: paper.paperAt, onChange: onDone },
     onDone,
@@ -94,7 +105,7 @@ function Part({
   return (
     <>
       {entry.slots.length > 1 ? <SlotTabs entry={entry} hasPhotos={false} /> : null}
-      <PaperSwitch paper={paper} />
+      <PaperTime paper={paper} />
       <FieldPanel jar={jar} entry={{ ...entry, step: next }} hasNextJar={hasNext} />
       <JarQuestions jar={jar} person={person} entry={entry} />
     </>

@@ -1,8 +1,16 @@
+import { PaperButton, type usePaper } from '@/components/bench/paper-switch'
 import { LargeCaution, useCaution } from '@/components/bench/station-caution'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 
-/** Where the jar stands, what to mind there, and the way out for a jar that cannot be read. */
-export function StationLine({ jar, onMiss }: { jar: BenchJarPage; onMiss: (() => void) | null }) {
+type Props = {
+  jar: BenchJarPage
+  /** Where it can be typed in. */
+  paper: ReturnType<typeof usePaper> | null
+  onMiss: (() => void) | null
+}
+
+/** Where the jar stands, what to mind there, and the ways out: read on paper, or not to be read. */
+export function StationLine({ jar, paper, onMiss }: Props) {
   const { id, name, temperatureC, caution } = jar.station
   const { isNew, noteRead } = useCaution({ stationId: id, day: jar.today, caution })
   return (
@@ -17,11 +25,14 @@ export function StationLine({ jar, onMiss }: { jar: BenchJarPage; onMiss: (() =>
           {name}
           {temperatureC === null ? '' : `, ${temperatureC} °C`}. {caution && !isNew ? <b>{caution}</b> : null}
         </p>
-        {onMiss ? (
-          <button type="button" className="min-h-16 underline underline-offset-4" onClick={onMiss}>
-            Cannot be read
-          </button>
-        ) : null}
+        <div className="flex gap-5">
+          {paper ? <PaperButton paper={paper} /> : null}
+          {onMiss ? (
+            <button type="button" className="min-h-16 underline underline-offset-4" onClick={onMiss}>
+              Cannot be read
+            </button>
+          ) : null}
+        </div>
       </div>
     </>
   )

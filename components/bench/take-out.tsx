@@ -19,7 +19,6 @@ export function TakeOut({ jar, onChange }: { jar: BenchJarPage; onChange: () => 
       onChange()
     } catch (refused) {
       setError(refused)
-    } finally {
       setBusy(false)
     }
   }

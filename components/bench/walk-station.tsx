@@ -16,10 +16,11 @@ type StationProps = {
   onOpen: (code: string) => void
   now: number
   day: string
+  zone: string
 }
 
 /** One place of the walk: its jars on its line, and unfolded each with what is asked of it. */
-export function WalkStation({ station, isOpen, kept, onPick, onOpen, now, day }: StationProps) {
+export function WalkStation({ station, isOpen, kept, onPick, onOpen, now, day, zone }: StationProps) {
   const celsius = station.kind === 'freeze-thaw' ? null : station.temperatureC
   const line = heatLine(celsius ?? station.cycleLowC ?? -10)
   const open = station.jars.filter((j) => j.state === 'due' || j.state === 'resting')
@@ -84,7 +85,14 @@ export function WalkStation({ station, isOpen, kept, onPick, onOpen, now, day }:
           <StationActs station={station} />
           <ul className="flex flex-col gap-3">
             {[...open, ...station.jars.filter((j) => !open.includes(j))].map((jar) => (
-              <JarRow key={jar.pullJarId} jar={jar} isKept={kept.has(jar.code)} onOpen={onOpen} now={now} />
+              <JarRow
+                key={jar.pullJarId}
+                jar={jar}
+                isKept={kept.has(jar.code)}
+                onOpen={onOpen}
+                now={now}
+                zone={zone}
+              />
             ))}
           </ul>
         </div>

@@ -1,8 +1,6 @@
 import { heatWeight } from '@/components/marks/heat'
 import type { Bench } from '@/lib/bench/queries/today'
-
-const width = 700
-const top = 22
+import { percentOf } from '@/lib/science/percent'
 
 /** The next seven working days on one ruler, true to the calendar, with how many jars which station asks for. */
 export function WeekLoad({ bench }: { bench: Bench }) {
@@ -13,86 +11,89 @@ export function WeekLoad({ bench }: { bench: Bench }) {
     week.some((one) => one.counts.some((count) => count.stationId === s.id)),
   )
   const span = daysBetween(bench.today, last)
-  const x = (day: string) => 120 + ((width - 150) * daysBetween(bench.today, day)) / span
-  const height = top + 14 + stations.length * 30
+  const at = (day: string) => ({ left: `${percentOf(daysBetween(bench.today, day), span)}%` })
   return (
     <section aria-labelledby="week-load" className="mt-6 px-4 sm:px-5">
       <h2 id="week-load" className="text-20 font-650">
         {total(week)} jars on the next seven working days
       </h2>
-      <div className="overflow-x-auto">
-        <svg
-          viewBox={`0 0 ${width} ${height}`}
-          width={width}
-          height={height}
-          className="min-w-[700px]"
-          aria-hidden
-        >
-          {week.map(({ day }) => (
-            <g key={day}>
-              <path d={`M${x(day)} ${top}V${height}`} stroke="var(--hair)" strokeWidth="1" />
-              <text x={x(day)} y={14} textAnchor="middle" fontSize="15" style={{ fill: 'var(--soft)' }}>
-                {shortWeekday(day)}
-              </text>
-            </g>
-          ))}
-          {stations.map((station, row) => {
+      <div className="mt-2 flex leading-none" aria-hidden>
+        <ol className="w-[6em] shrink-0 pt-12 text-17">
+          {stations.map((station) => {
             const celsius = station.kind === 'freeze-thaw' ? null : station.temperatureC
-            const y = top + 26 + row * 30
             return (
-              <g key={station.id}>
-                <text
-                  x="0"
-                  y={y - 5}
-                  fontSize="17"
-                  style={{ fill: 'var(--ink)', fontWeight: celsius === null ? 430 : heatWeight(celsius) }}
-                >
-                  {celsius === null ? 'freeze-thaw' : `${String(celsius).replace('-', '\u2212')} °C`}
-                </text>
-                <path d={`M100 ${y}H${width}`} stroke="var(--ink)" strokeWidth="1" />
-                {week.map(({ day, counts }) => {
-                  const count = counts.find((one) => one.stationId === station.id)?.count ?? 0
-                  return count === 0 ? null : (
-                    <text
-                      key={day}
-                      x={x(day)}
-                      y={y - 5}
-                      textAnchor="middle"
-                      fontSize="18"
-                      style={{ fill: 'var(--ink)', fontWeight: 650 }}
-                    >
-                      {count}
-                    </text>
-                  )
-                })}
-              </g>
+              <li
+                key={station.id}
+                className="flex h-9 items-end whitespace-nowrap pb-1"
+                style={{ fontWeight: celsius === null ? 430 : heatWeight(celsius) }}
+              >
+                {celsius === null ? 'freeze-thaw' : `${String(celsius).replace('-', '\u2212')} °C`}
+              </li>
             )
           })}
-        </svg>
-      </div>
-      <table className="sr-only">
-        <caption>Jars on the next working days</caption>
-        <thead>
-          <tr>
-            <th>Station</th>
+        </ol>
+        <div className="min-w-0 flex-1">
+          <div className="relative mx-4">
             {week.map(({ day }) => (
-              <th key={day}>{shortWeekday(day)}</th>
+              <p
+                key={day}
+                className="absolute top-0 -translate-x-1/2 text-center text-16 text-soft"
+                style={at(day)}
+              >
+                {shortWeekday(day).slice(0, 2)}
+                <b className="block pt-1.5 font-650">{Number(day.slice(8))}</b>
+              </p>
             ))}
-          </tr>
-        </thead>
-        <tbody>
-          {stations.map((station) => (
-            <tr key={station.id}>
-              <th>{station.name}</th>
-              {week.map(({ day, counts }) => (
-                <td key={day}>{counts.find((one) => one.stationId === station.id)?.count ?? 0}</td>
+          </div>
+          <ol className="relative pt-12">
+            {stations.map((station) => (
+              <li key={station.id} className="h-9 border-b border-ink px-4">
+                <div className="relative h-full">
+                  {week.map(({ day, counts }) => (
+                    <span
+                      key={day}
+                      className="absolute bottom-0 flex h-full -translate-x-1/2 items-end justify-center pb-1 text-18 font-650"
+                      style={at(day)}
+                    >
+                      {counts.find((one) => one.stationId === station.id)?.count ?? <Tick />}
+                    </span>
+                  ))}
+                </div>
+              </li>
+            ))}
+          </ol>
+        </div>
+      </div>
+      <div className="sr-only">
+        <table>
+          <caption>Jars on the next working days</caption>
+          <thead>
+            <tr>
+              <th>Station</th>
+              {week.map(({ day }) => (
+                <th key={day}>{shortWeekday(day)}</th>
               ))}
             </tr>
-          ))}
-        </tbody>
-      </table>
+          </thead>
+          <tbody>
+            {stations.map((station) => (
+              <tr key={station.id}>
+                <th>{station.name}</th>
+                {week.map(({ day, counts }) => (
+                  <td key={day}>{counts.find((one) => one.stationId === station.id)?.count ?? 0}</td>
+                ))}
+              </tr>
+            ))}
+          </tbody>
+        </table>
+      </div>
     </section>
   )
+}
+
+/** A day on which the station asks for nothing. */
+function Tick() {
+  return <span className="mb-[-4px] block h-2 w-px bg-rule" />
 }
 
 function total(week: Bench['week']): number {
