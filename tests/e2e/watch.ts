@@ -18,7 +18,7 @@ export const test = base.extend<{ watch: Watch }>({
       const refusals: { address: RegExp; status: number }[] = []
       let isCut = false
       const isExpected = (text: string, address: string) =>
-        (isCut && text.includes('net::ERR_INTERNET_DISCONNECTED')) ||
+        (isCut && /net::ERR_(INTERNET_DISCONNECTED|PROXY_CONNECTION_FAILED)/.test(text)) ||
         refusals.some((one) => text.includes(`status of ${one.status} `) && one.address.test(address))
 
       const over = async (watched: BrowserContext) => {
