@@ -107,12 +107,15 @@ describe('what happens to a jar', () => {
   })
 
   it('a spare of which nothing is asked can be broken too, once', async () => {
+    // At 45 °C the spares are wanted below.
     const spare = await t.db
       .selectFrom('jar')
-      .select('code')
-      .where('studyId', '=', study.studyId)
-      .where('kind', '=', 'spare')
-      .orderBy('code')
+      .innerJoin('studyStation as ss', 'ss.id', 'jar.studyStationId')
+      .select('jar.code')
+      .where('jar.studyId', '=', study.studyId)
+      .where('jar.kind', '=', 'spare')
+      .where('ss.temperatureC', '=', 5)
+      .orderBy('jar.code')
       .executeTakeFirstOrThrow()
     const one = { ...spare, pullJarId: '' }
     expect((await note(one, { kind: 'missed', isJarAlone: true })).status).toBe(422)

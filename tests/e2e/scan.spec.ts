@@ -1,0 +1,68 @@
+import { gzipSync } from 'node:zlib'
+import { create } from 'qrcode'
+import { openAs } from './people'
+import { expect, test } from './watch'
+import type { Page } from '@playwright/test'
+
+test.use({ viewport: { width: 820, height: 1180 } })
+
+/** Compressed bytes of the scripts that a page asks for before it stands; old browsers' own are not counted. */
+async function scriptsOf(page: Page, address: string): Promise<{ bytes: number; files: string[] }> {
+  const html = await (await page.request.get(address)).text()
+  const tags = [...html.matchAll(/<script[^>]*\ssrc="([^"]+\.js)[^>]*>/g)].filter(
+    ([tag]) => !/nomodule/i.test(tag),
+  )
+  const files = [...new Set(tags.map((tag) => tag[1]!))]
+  const texts = await Promise.all(files.map(async (file) => (await page.request.get(file)).body()))
+  return { bytes: texts.reduce((sum, text) => sum + gzipSync(text).length, 0), files }
+}
+
+test('the Bench loads quickly, and a label held before the camera opens its jar', async ({ page }) => {
+  await openAs(page, 'jos', '/bench')
+  const empty = await scriptsOf(page, '/studies/S-999')
+  const bench = await scriptsOf(page, '/bench')
+  const ratio = bench.bytes / empty.bytes
+  console.log(`scripts: empty page ${empty.bytes} B, Bench ${bench.bytes} B, ${ratio.toFixed(2)} times`)
+  expect(empty.bytes, 'a page of the notebook with nothing on it').toBeGreaterThan(50_000)
+  expect(ratio).toBeLessThan(1.5)
+
+  // The camera's picture: a label lying askew on a bench, drawn by another program than the application's.
+  const day = (await (await page.request.get('/api/bench')).json()) as {
+    stations: { jars: { code: string; state: string }[] }[]
+  }
+  const { code } = day.stations.flatMap((station) => station.jars).find((jar) => jar.state === 'due')!
+  const { size, data } = create(code, { errorCorrectionLevel: 'H' }).modules
+  await page.evaluate(
+    ({ size, dark }) => {
+      const canvas = Object.assign(document.createElement('canvas'), { width: 1280, height: 720 })
+      const draw = () => {
+        const pen = canvas.getContext('2d')!
+        pen.fillStyle = '#8a8f8b'
+        pen.fillRect(0, 0, 1280, 720)
+        pen.save()
+        pen.translate(520, 200)
+        pen.rotate(0.12)
+        pen.fillStyle = '#f4f1e8'
+        pen.fillRect(-60, -60, 420, 420)
+        pen.fillStyle = '#1c1c1c'
+        const side = 300 / size
+        dark.forEach((isDark, i) => {
+          if (isDark) pen.fillRect((i % size) * side, Math.floor(i / size) * side, side + 0.4, side + 0.4)
+        })
+        pen.restore()
+      }
+      draw()
+      setInterval(draw, 100)
+      navigator.mediaDevices.getUserMedia = () => Promise.resolve(canvas.captureStream(10))
+    },
+    { size, dark: Array.from(data, (bit) => bit === 1) },
+  )
+  await page.waitForLoadState('networkidle')
+  const [decoder] = await Promise.all([
+    page.waitForRequest((request) => /\.js$/.test(new URL(request.url()).pathname)),
+    page.getByRole('button', { name: 'Scan a label' }).click(),
+  ])
+  expect(bench.files, 'camera and decoder come only now').not.toContain(new URL(decoder.url()).pathname)
+  await expect(page).toHaveURL(new RegExp(`/bench/${code}$`))
+  await expect(page.getByRole('heading', { name: new RegExp(code) })).toBeVisible()
+})
