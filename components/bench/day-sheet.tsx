@@ -123,9 +123,12 @@ function Blanks({ jar }: { jar: BenchJar }) {
         : field.kind === 'layers'
           ? 'mm top / below'
           : field.unit
+    const isGross = field.attribute === 'mass' && jar.isWeighed
     return Array.from({ length: field.replicates }, (_, i) => ({
       key: `${field.attribute}.${i}`,
-      label: `${field.label}${field.replicates > 1 ? ` ${i + 1}` : ''}${unit ? `, ${unit}` : ''}`,
+      label: isGross
+        ? 'Mass with jar, g'
+        : `${field.label}${field.replicates > 1 ? ` ${i + 1}` : ''}${unit ? `, ${unit}` : ''}`,
     }))
   })
   return (

@@ -32,7 +32,7 @@ export function LargeCaution({ caution, onRead }: { caution: string; onRead: () 
     <div role="note" className="flex flex-wrap items-center gap-3 border-l-[5px] border-ink py-1 pl-3">
       <p className="min-w-0 flex-1 text-24 font-700 leading-tight">{caution}</p>
       <Button density="bench" onClick={onRead}>
-        Read
+        Seen
       </Button>
     </div>
   )

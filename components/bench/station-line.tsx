@@ -16,7 +16,7 @@ export function StationLine({ jar, paper, onMiss }: Props) {
   return (
     <>
       {isNew ? (
-        <div className="px-4 py-1 sm:px-7">
+        <div className="px-4 py-1 sm:hidden">
           <LargeCaution caution={caution} onRead={noteRead} />
         </div>
       ) : null}
@@ -24,8 +24,18 @@ export function StationLine({ jar, paper, onMiss }: Props) {
         <p>
           {name}
           {temperatureC === null ? '' : `, ${temperatureC} °C`}. {caution && !isNew ? <b>{caution}</b> : null}
+          {isNew ? <b className="hidden text-22 leading-tight sm:inline">{caution}</b> : null}
         </p>
         <div className="flex gap-5">
+          {isNew ? (
+            <button
+              type="button"
+              className="hidden min-h-16 underline underline-offset-4 sm:inline"
+              onClick={noteRead}
+            >
+              Seen
+            </button>
+          ) : null}
           {paper ? <PaperButton paper={paper} /> : null}
           {onMiss ? (
             <button type="button" className="min-h-16 underline underline-offset-4" onClick={onMiss}>

@@ -1,7 +1,7 @@
 import Link from 'next/link'
 import type { DayJar, DayReading } from '@/lib/day/queries/day'
-import { attributeName } from '@/lib/reading/schema/attributes'
-import { listed } from '@/lib/study/rules/words'
+import { attributeName, attributes, type Attribute } from '@/lib/reading/schema/attributes'
+import { listed, shownWithUnit } from '@/lib/study/rules/words'
 
 type Props = { jar: DayJar; readings: DayReading[]; isLate: (id: string) => boolean }
 
@@ -34,7 +34,7 @@ export function DayJarPart({ jar, readings, isLate }: Props) {
                 {attributeName(one.attribute)}
                 {one.replicate > 1 ? ` ${one.replicate}` : ''}
               </b>{' '}
-              {one.isVoid ? 'void' : one.typed}
+              {one.isVoid ? 'void' : entered(one)}
             </span>
             <span className="text-soft">
               {one.by}, {time(one.recordedAt)}
@@ -52,6 +52,14 @@ export function DayJarPart({ jar, readings, isLate }: Props) {
       </ul>
     </div>
   )
+}
+
+/** What was typed, and what it came to where that is another number: a torque, a jar's mass. */
+function entered({ attribute, value, typed }: DayReading): string {
+  const known = (attributes as Record<string, Attribute>)[attribute]
+  if (!known || known.words || value === null) return typed
+  const shown = shownWithUnit(known, value)
+  return Number(typed.replace(',', '.')) === value ? shown : `${shown}, typed ${typed}`
 }
 
 function time(at: string): string {

@@ -27,6 +27,8 @@ export type BenchJar = {
   /** The window is over. */
   isOverdue: boolean
   isLastDay: boolean
+  /** Empty and filled it was weighed, so its mass is read in grams, jar and all. */
+  isWeighed: boolean
   shelf: number | null
   place: number | null
   openedBy: { personId: string; name: string; initials: string; at: string } | null
@@ -77,6 +79,7 @@ export function benchJar(row: BenchJarRow, values: Values, today: string, now: s
     windowTo: row.windowTo,
     isOverdue: isToRead(row.state) && row.windowTo < today,
     isLastDay: isToRead(row.state) && row.windowTo === today,
+    isWeighed: row.tareG !== null && row.grossG !== null,
     shelf: row.shelf,
     place: row.place,
     openedBy:

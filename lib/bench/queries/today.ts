@@ -29,7 +29,11 @@ export async function todaysBench(
         // Pulled early, and not yet read.
         sql<boolean>`(pj.state = 'due' and exists (select from jar_mishap m
           where m.pull_jar_id = pj.id and m.kind = 'pulled early'))`,
-        eb(sql<string>`(pj.closed_at at time zone ${zone})::date`, '=', today),
+        and([
+          eb(sql<string>`(pj.closed_at at time zone ${zone})::date`, '=', today),
+          // Later pulls that a broken jar took with it are not of today.
+          or([eb('pj.state', '<>', 'missed'), eb('pull.dueOn', '<=', today)]),
+        ]),
       ]),
     )
     .execute()
