@@ -7,7 +7,11 @@ import { jobs as caseJobs } from '@/lib/shelf-case/jobs'
 import { jobs as trailJobs } from '@/lib/trail/jobs'
 import { job, type Job } from './job'
 
-const photoJobs = [job(previewQueue, z.object({ sha256: z.string(), type: z.string().default('image/jpeg') }), (_, data) => makePhotoPreview(data))]
+const photoJobs = [
+  job(previewQueue, z.object({ sha256: z.string(), type: z.string().default('image/jpeg') }), (_, data) =>
+    makePhotoPreview(data),
+  ),
+]
 
 /** Every queue has one handler here; a test holds this list against queues.ts. */
 export const registry: readonly Job[] = [
