@@ -6,7 +6,11 @@ import type { Bench } from '@/lib/bench/queries/today'
 export function WalkStrip({ bench, code }: { bench: Bench; code: string }) {
   const stations = bench.stations.filter((s) => s.jars.length > 0)
   return (
-    <nav aria-label="Today’s walk" className="hidden overflow-x-auto bg-recess sm:block px-7 py-2">
+    <nav
+      aria-label="Today’s walk"
+      tabIndex={0}
+      className="hidden overflow-x-auto bg-recess px-7 py-2 sm:block"
+    >
       <p className="text-17">
         <b>{bench.counts.done}</b> of {bench.counts.total} jars read
       </p>
