@@ -13,7 +13,8 @@ export const projectRoot = path.resolve(import.meta.dirname, '../..')
 const ports = (process.env['STILLSTAND_E2E_PORTS'] ?? '4310,4311').split(',').map(Number)
 
 function describeLab(name: LabName, port: number): Lab {
-  const database = `stillstand_e2e_${name}`
+  // The port is in the name, so that two runs on one server do not drop each other's lab.
+  const database = `stillstand_e2e_${name}_${port}`
   const url = `http://127.0.0.1:${port}`
   return {
     name,
