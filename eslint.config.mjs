@@ -8,7 +8,7 @@ import { formulas } from './lib/cli/lint/formulas.mjs'
 const root = import.meta.dirname
 /** Rooms of lib that belong to no noun. */
 const rooms = ['auth', 'cli', 'db', 'files', 'http', 'jobs', 'mail', 'science']
-const closedList = ['schema', 'rules', 'queries', 'commands', 'hooks', 'jobs', 'mail', 'document']
+const closedList = ['schema', 'keys', 'rules', 'queries', 'commands', 'hooks', 'jobs', 'mail', 'document']
 
 const isIn = (file, ...folders) => folders.some((folder) => file.startsWith(`${folder}/`))
 /** Whether a file is a noun's queries.ts, or in its folder queries/. */
@@ -51,11 +51,17 @@ const walls = [
       'schema.ts and rules.ts run in the browser too: beside types they import zod, lib/science, lib/http/errors and other schema or rules only. Pass the rest in as a parameter.',
   },
   {
+    holdsFor: (file) => isPart(file, 'keys'),
+    refuses: (_target, isType) => !isType,
+    instead:
+      'keys.ts holds addresses alone, so that a page which asks for one does not load zod with it. Import types only.',
+  },
+  {
     holdsFor: (file) => isIn(file, 'components'),
     refuses: (target, isType) =>
       !isType && (isPart(target, 'queries', 'commands', 'jobs', 'mail', 'document') || isServerRoom(target)),
     instead:
-      'Components run in the browser: take `import type` from queries, values from schema, rules, hooks, lib/science or lib/http/fetcher; the page passes rows in as props.',
+      'Components run in the browser: take `import type` from queries, values from schema, keys, rules, hooks, lib/science or lib/http/fetcher; the page passes rows in as props.',
   },
   {
     holdsFor: (file) => isIn(file, 'components'),

@@ -5,7 +5,7 @@ import { PhotosOnTheirWay } from '@/components/device/photos-on-their-way'
 import { usePhotos } from '@/components/device/use-photos'
 import { Button } from '@/components/ui/button'
 import { Field } from '@/components/ui/field'
-import { batchPhotoKeys } from '@/lib/batch/schema'
+import { batchPhotoKeys } from '@/lib/batch/keys'
 import { dayAndHour } from './balance-choice'
 import type { BatchWork } from './work'
 

@@ -4,7 +4,7 @@ import useSWR from 'swr'
 import { Button } from '@/components/ui/button'
 import type { BatchPage } from '@/lib/batch/queries/get-batch'
 import { initialForStudy } from '@/lib/batch/rules/readings'
-import { batchKey } from '@/lib/batch/schema'
+import { batchKey } from '@/lib/batch/keys'
 import { fetcher } from '@/lib/http/fetcher'
 
 type Taken = NonNullable<ReturnType<typeof initialForStudy>>

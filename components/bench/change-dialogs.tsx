@@ -12,7 +12,7 @@ import { Field } from '@/components/ui/field'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 import { newId } from '@/lib/db/id'
 import { ClientError, send } from '@/lib/http/fetcher'
-import { readingKeys } from '@/lib/reading/schema/change'
+import { readingKeys } from '@/lib/reading/keys'
 
 const quickReasons = ['misread', 'typed wrong', 'another jar', 'instrument was not ready'] as const
 

@@ -7,7 +7,7 @@ import { ErrorNote } from '@/components/ui/error-note'
 import { newId } from '@/lib/db/id'
 import { send } from '@/lib/http/fetcher'
 import type { Substitute, WhatFollows } from '@/lib/pull/queries/what-follows'
-import { pullKeys } from '@/lib/pull/schema'
+import { pullKeys } from '@/lib/pull/keys'
 
 type Props = {
   pullJarId: string

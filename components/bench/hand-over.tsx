@@ -13,7 +13,7 @@ import { toast } from '@/components/ui/toast'
 import type { BenchJar } from '@/lib/bench/queries/bench-jar'
 import type { Bench } from '@/lib/bench/queries/today'
 import { newId } from '@/lib/db/id'
-import { handoverKeys } from '@/lib/handover/schema'
+import { handoverKeys } from '@/lib/handover/keys'
 
 type Props = { bench: Bench; now: number; onChange: () => void }
 

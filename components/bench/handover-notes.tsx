@@ -5,7 +5,7 @@ import { Button } from '@/components/ui/button'
 import { ErrorNote } from '@/components/ui/error-note'
 import type { Bench } from '@/lib/bench/queries/today'
 import { newId } from '@/lib/db/id'
-import { handoverKeys } from '@/lib/handover/schema'
+import { handoverKeys } from '@/lib/handover/keys'
 import { send } from '@/lib/http/fetcher'
 import { dayText } from '@/lib/report/rules'
 

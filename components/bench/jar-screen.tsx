@@ -8,7 +8,7 @@ import { Button } from '@/components/ui/button'
 import { ErrorNote } from '@/components/ui/error-note'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 import type { Bench } from '@/lib/bench/queries/today'
-import { benchKeys } from '@/lib/bench/schema'
+import { benchKeys } from '@/lib/bench/keys'
 import { fetcher } from '@/lib/http/fetcher'
 
 export type JarScreenProps = {

@@ -9,7 +9,8 @@ import { ErrorNote } from '@/components/ui/error-note'
 import { Field } from '@/components/ui/field'
 import type { BenchJar } from '@/lib/bench/queries/bench-jar'
 import { newId } from '@/lib/db/id'
-import { jarKeys, type MishapKind, type NotedMishap } from '@/lib/jar/schema'
+import { jarKeys } from '@/lib/jar/keys'
+import type { MishapKind, NotedMishap } from '@/lib/jar/schema'
 
 const causes: { kind: MishapKind; says: string }[] = [
   { kind: 'missed', says: 'oven could not be opened' },

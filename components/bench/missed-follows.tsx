@@ -8,7 +8,7 @@ import { Button } from '@/components/ui/button'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 import { fetcher } from '@/lib/http/fetcher'
 import type { WhatFollows } from '@/lib/pull/queries/what-follows'
-import { pullKeys } from '@/lib/pull/schema'
+import { pullKeys } from '@/lib/pull/keys'
 
 /** A jar that was not read: what that means, and still the choice of another in its place. */
 export function MissedFollows({

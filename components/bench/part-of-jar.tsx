@@ -16,7 +16,7 @@ import { Button } from '@/components/ui/button'
 import { ErrorNote } from '@/components/ui/error-note'
 import type { BenchJar } from '@/lib/bench/queries/bench-jar'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
-import { benchKeys } from '@/lib/bench/schema'
+import { benchKeys } from '@/lib/bench/keys'
 import { fetcher } from '@/lib/http/fetcher'
 import { readJarCode } from '@/lib/jar/rules/code'
 

@@ -5,7 +5,7 @@ import { Button } from '@/components/ui/button'
 import { ErrorNote } from '@/components/ui/error-note'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 import { send } from '@/lib/http/fetcher'
-import { pullKeys } from '@/lib/pull/schema'
+import { pullKeys } from '@/lib/pull/keys'
 
 /** A measuring jar rests closed before it is opened, unless it has its room's temperature already. */
 export function TakeOut({ jar, onChange }: { jar: BenchJarPage; onChange: () => void }) {

@@ -7,11 +7,11 @@ import { setLastSave, useLastSave, type LastSave } from '@/components/bench/last
 import { sentenceOf } from '@/components/ui/error-note'
 import { useDevice } from '@/components/device/device-context'
 import type { OutboxOnScreen } from '@/components/device/use-outbox'
-import { benchKeys } from '@/lib/bench/schema'
+import { benchKeys } from '@/lib/bench/keys'
 import { fetcher, send } from '@/lib/http/fetcher'
 import { undoSeconds } from '@/lib/pull/rules/undo-seconds'
 import { percentOf } from '@/lib/science/percent'
-import { pullKeys } from '@/lib/pull/schema'
+import { pullKeys } from '@/lib/pull/keys'
 
 type Props = { outbox: OutboxOnScreen; onOpen: (code: string) => void; onChange: () => void }
 

@@ -2,7 +2,7 @@
 
 import { useState } from 'react'
 import type { Bench } from '@/lib/bench/queries/today'
-import { benchKeys } from '@/lib/bench/schema'
+import { benchKeys } from '@/lib/bench/keys'
 import { ClientError, fetcher } from '@/lib/http/fetcher'
 import { readJarCode } from '@/lib/jar/rules/code'
 

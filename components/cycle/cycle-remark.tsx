@@ -3,7 +3,7 @@
 import Link from 'next/link'
 import useSWR from 'swr'
 import type { CycleBoard } from '@/lib/cycle/queries/board'
-import { cycleKeys } from '@/lib/cycle/schema'
+import { cycleKeys } from '@/lib/cycle/keys'
 import { fetcher } from '@/lib/http/fetcher'
 import { stateOf, whenText } from './cycle-words'
 import { useServerClock } from './use-server-clock'

@@ -3,7 +3,7 @@
 import { useOutbox } from '@/components/device/use-outbox'
 import { toast } from '@/components/ui/toast'
 import type { CyclePlace } from '@/lib/cycle/queries/board'
-import { cycleKeys } from '@/lib/cycle/schema'
+import { cycleKeys } from '@/lib/cycle/keys'
 import { newId } from '@/lib/db/id'
 
 type Half = { cycle: number; half: 'cold' | 'warm' }

@@ -4,7 +4,7 @@ import { ReviewForm } from '@/components/day/review-form'
 import { Heading } from '@/components/ui/heading'
 import { Section } from '@/components/ui/section'
 import type { DayOnRecord } from '@/lib/day/queries/day'
-import { photoKeys } from '@/lib/photo/schema'
+import { photoKeys } from '@/lib/photo/keys'
 import { dayText } from '@/lib/report/rules'
 import { counted, listed } from '@/lib/study/rules/words'
 

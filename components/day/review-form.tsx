@@ -5,7 +5,7 @@ import { useState, type FormEvent } from 'react'
 import { Button } from '@/components/ui/button'
 import { ErrorNote } from '@/components/ui/error-note'
 import { Field } from '@/components/ui/field'
-import { dayKeys } from '@/lib/day/schema'
+import { dayKeys } from '@/lib/day/keys'
 import { newId } from '@/lib/db/id'
 import { send } from '@/lib/http/fetcher'
 

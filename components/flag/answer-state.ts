@@ -1,6 +1,7 @@
 import type { FlagPage } from '@/lib/flag/queries/one'
 import { namedJar } from '@/lib/jar/rules/code'
-import { flagKeys, type FlagCause } from '@/lib/flag/schema'
+import { flagKeys } from '@/lib/flag/keys'
+import type { FlagCause } from '@/lib/flag/schema'
 
 /** What becomes of it: an answer, or the doubt or the reading itself set aside. */
 export type Settling = 'answer' | 'doubt' | 'reading'

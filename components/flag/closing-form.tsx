@@ -6,7 +6,7 @@ import { ErrorNote } from '@/components/ui/error-note'
 import { TextArea } from '@/components/ui/text-area'
 import { toast } from '@/components/ui/toast'
 import type { FlagPage } from '@/lib/flag/queries/one'
-import { flagKeys } from '@/lib/flag/schema'
+import { flagKeys } from '@/lib/flag/keys'
 import { isStale, Stale } from './stale'
 import { useFlagAct } from './use-flag-act'
 

@@ -6,7 +6,7 @@ import { ErrorNote } from '@/components/ui/error-note'
 import { TextArea } from '@/components/ui/text-area'
 import { newId } from '@/lib/db/id'
 import type { FlagPage } from '@/lib/flag/queries/one'
-import { flagKeys } from '@/lib/flag/schema'
+import { flagKeys } from '@/lib/flag/keys'
 import { dayIn, spokenDay } from '@/lib/study/rules/calendar'
 import { useFlagAct } from './use-flag-act'
 

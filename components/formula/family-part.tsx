@@ -4,7 +4,8 @@ import { percentText } from '@/lib/formula/rules/numbers'
 import { familyGrid } from '@/lib/formula/rules/variants'
 import type { Family } from '@/lib/formula/queries/list-families'
 import { MakeFamily } from './make-family'
-import { compareAddress, mostCompared } from '@/lib/formula/schema'
+import { compareAddress } from '@/lib/formula/keys'
+import { mostCompared } from '@/lib/formula/schema'
 
 type Props = { family: Family; code: string; mayMake: boolean }
 

@@ -4,7 +4,7 @@ import { useMemo, useState, useSyncExternalStore } from 'react'
 import useSWR from 'swr'
 import { fetcher } from '@/lib/http/fetcher'
 import type { FormulaPage } from '@/lib/formula/queries/get-formula'
-import { formulaKey } from '@/lib/formula/schema'
+import { formulaKey } from '@/lib/formula/keys'
 import { FormulaEditor } from './formula-editor'
 import { hasKeptDraft } from './use-draft'
 

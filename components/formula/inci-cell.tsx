@@ -4,7 +4,7 @@ import { useId, useState, type KeyboardEvent } from 'react'
 import useSWR from 'swr'
 import { fetcher } from '@/lib/http/fetcher'
 import type { FoundIngredient, IngredientRow } from '@/lib/ingredient/queries'
-import { ingredientsKey } from '@/lib/ingredient/schema'
+import { ingredientsKey } from '@/lib/ingredient/keys'
 import { Cell } from './cell'
 
 type Props = {

@@ -9,7 +9,7 @@ import { ErrorNote } from '@/components/ui/error-note'
 import { NumberField } from '@/components/ui/number-field'
 import { newId } from '@/lib/db/id'
 import type { FormulaPage } from '@/lib/formula/queries/get-formula'
-import { formulaKey } from '@/lib/formula/schema'
+import { formulaKey } from '@/lib/formula/keys'
 import { ClientError, fetcher, send } from '@/lib/http/fetcher'
 
 type Props = { base: string; codes: string[] }

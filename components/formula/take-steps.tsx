@@ -13,7 +13,7 @@ import { newId } from '@/lib/db/id'
 import type { FormulaPage } from '@/lib/formula/queries/get-formula'
 import type { FormulasPage } from '@/lib/formula/queries/list-formulas'
 import { typeStep } from '@/lib/formula/rules/typed'
-import { formulaKey } from '@/lib/formula/schema'
+import { formulaKey } from '@/lib/formula/keys'
 import { fetcher } from '@/lib/http/fetcher'
 import type { ChangeSteps } from './step-sheet'
 

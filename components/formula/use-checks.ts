@@ -11,7 +11,7 @@ import { readTargetPh } from '@/lib/formula/rules/target-ph'
 import { isBlankLine, remainderOf, type TypedLine } from '@/lib/formula/rules/typed'
 import type { EmulsionType, FormulaStep } from '@/lib/formula/schema'
 import type { IngredientFacts } from '@/lib/ingredient/queries'
-import { ingredientFactsKey } from '@/lib/ingredient/schema'
+import { ingredientFactsKey } from '@/lib/ingredient/keys'
 
 /** The questions to the draft on screen; what the book knows of an ingredient picked since is fetched. */
 export function useChecks(

@@ -4,7 +4,7 @@ import Link from 'next/link'
 import useSWR from 'swr'
 import { fetcher } from '@/lib/http/fetcher'
 import type { IngredientPage } from '@/lib/ingredient/queries'
-import { ingredientKey } from '@/lib/ingredient/schema'
+import { ingredientKey } from '@/lib/ingredient/keys'
 import { dayIn, spokenDay } from '@/lib/study/rules/calendar'
 
 /** Which formulas use it, and who changed it last; every earlier value is in the record. */

@@ -14,7 +14,7 @@ import { checkOf, DailyCheckFields, draftOf, type CheckDraft } from './daily-che
 import { newId } from '@/lib/db/id'
 import { ClientError, send } from '@/lib/http/fetcher'
 import type { InstrumentPage } from '@/lib/instrument/queries/list'
-import { instrumentKeys } from '@/lib/instrument/schema'
+import { instrumentKeys } from '@/lib/instrument/keys'
 
 type Instrument = Omit<InstrumentPage, 'calibrations' | 'checks'>
 type Props = { instrument: Instrument | null; onClose: () => void; onDone: () => void }

@@ -9,7 +9,7 @@ import { NumberField } from '@/components/ui/number-field'
 import { Select } from '@/components/ui/select'
 import { newId } from '@/lib/db/id'
 import { ClientError, send } from '@/lib/http/fetcher'
-import { lotKeys } from '@/lib/lot/schema'
+import { lotKeys } from '@/lib/lot/keys'
 import { readTyped } from '@/lib/number/rules'
 
 type Line = { temperature: string; value: string }

@@ -9,7 +9,7 @@ import { Section } from '@/components/ui/section'
 import { send } from '@/lib/http/fetcher'
 import type { LotRow } from '@/lib/lot/queries'
 import { goodUntil, lotDoubt } from '@/lib/lot/rules'
-import { lotKeys } from '@/lib/lot/schema'
+import { lotKeys } from '@/lib/lot/keys'
 import { spokenDay } from '@/lib/study/rules/calendar'
 import { LotDialog } from './lot-dialog'
 

@@ -9,7 +9,7 @@ import { readTyped } from '@/lib/number/rules'
 import { toast } from '@/components/ui/toast'
 import { ClientError, send } from '@/lib/http/fetcher'
 import type { JarRow } from '@/lib/jar/queries/jars'
-import { jarKeys } from '@/lib/jar/schema'
+import { jarKeys } from '@/lib/jar/keys'
 
 /** Tare, gross and fill height of one jar, from which weight loss and layers are told. */
 export function FillDialog({

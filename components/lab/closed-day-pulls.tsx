@@ -13,12 +13,12 @@ import { Section } from '@/components/ui/section'
 import { toast } from '@/components/ui/toast'
 import { ClientError, fetcher, send } from '@/lib/http/fetcher'
 import type { ClosedDayPull } from '@/lib/pull/queries/on-closed-days'
-import { pullKeys } from '@/lib/pull/schema'
+import { pullKeys } from '@/lib/pull/keys'
 import { spokenDay } from '@/lib/study/rules/calendar'
 import { degrees } from '@/lib/study/rules/finding'
 import { capital, counted, listed, withVariant } from '@/lib/study/rules/words'
 import { namedDay } from '@/lib/study/rules/working-days'
-import { workloadKey } from '@/lib/study/schema'
+import { workloadKey } from '@/lib/study/keys'
 
 /** Planned pulls of running studies on days on which nobody is there, and the offer to move them inside their windows. */
 export function ClosedDayPulls({ mayMove }: { mayMove: boolean }) {

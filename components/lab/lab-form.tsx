@@ -10,7 +10,7 @@ import { Select } from '@/components/ui/select'
 import { toast } from '@/components/ui/toast'
 import { ClientError, fetcher, send } from '@/lib/http/fetcher'
 import type { Lab } from '@/lib/lab/queries'
-import { labKey } from '@/lib/lab/schema'
+import { labKey } from '@/lib/lab/keys'
 
 export function LabForm({ timeZones }: { timeZones: string[] }) {
   const { data: lab, mutate } = useSWR<Lab, ClientError>(labKey, fetcher)

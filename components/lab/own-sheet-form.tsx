@@ -13,7 +13,7 @@ import { ClientError, fetcher, send } from '@/lib/http/fetcher'
 import type { LabelGrid } from '@/lib/label/rules/grid'
 import { labelGrid } from '@/lib/label/schema'
 import type { Lab } from '@/lib/lab/queries'
-import { labKey } from '@/lib/lab/schema'
+import { labKey } from '@/lib/lab/keys'
 import { readDecimal } from '@/lib/number/rules'
 
 const fields = [

@@ -9,8 +9,8 @@ import { ErrorNote } from '@/components/ui/error-note'
 import { toast } from '@/components/ui/toast'
 import { ClientError, fetcher, send } from '@/lib/http/fetcher'
 import type { Lab } from '@/lib/lab/queries'
-import { labKey } from '@/lib/lab/schema'
-import { pullKeys } from '@/lib/pull/schema'
+import { labKey } from '@/lib/lab/keys'
+import { pullKeys } from '@/lib/pull/keys'
 import { weekdays } from '@/lib/study/rules/working-days'
 
 /** The days of the week on which somebody is there; pulls of studies that start from now on are laid on them. */

@@ -12,7 +12,7 @@ import { capital, counted } from '@/lib/study/rules/words'
 import { holidaysText, namedDay } from '@/lib/study/rules/working-days'
 import { fullestWeek, workloadOf, type Workload, type WorkloadWeek } from '@/lib/study/rules/workload'
 import type { LabWorkload } from '@/lib/study/queries/workload'
-import { workloadKey } from '@/lib/study/schema'
+import { workloadKey } from '@/lib/study/keys'
 import { ClosedDayPulls } from './closed-day-pulls'
 import { labTabs } from './lab-tabs'
 

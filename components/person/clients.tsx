@@ -7,7 +7,7 @@ import { Button } from '@/components/ui/button'
 import { ErrorNote } from '@/components/ui/error-note'
 import { Field } from '@/components/ui/field'
 import type { ClientRow } from '@/lib/client/queries'
-import { clientsKey } from '@/lib/client/schema'
+import { clientsKey } from '@/lib/client/keys'
 import { newId } from '@/lib/db/id'
 import { send } from '@/lib/http/fetcher'
 

@@ -13,7 +13,7 @@ import { newId } from '@/lib/db/id'
 import { ClientError, send } from '@/lib/http/fetcher'
 import type { PersonRow } from '@/lib/person/queries'
 import { proposeInitials } from '@/lib/person/rules'
-import { peopleKey, personKey } from '@/lib/person/schema'
+import { peopleKey, personKey } from '@/lib/person/keys'
 import { PersonFields, type PersonDraft } from './person-fields'
 
 type Common = { clients: ClientRow[]; onClose: () => void; onDone: (person: PersonRow) => void }

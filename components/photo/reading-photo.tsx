@@ -1,4 +1,4 @@
-import { photoKeys } from '@/lib/photo/schema'
+import { photoKeys } from '@/lib/photo/keys'
 import type { PhotoLinesOfReading } from '@/lib/reading/schema/photo-lines'
 import { PhotoWithLines } from './photo-with-lines'
 

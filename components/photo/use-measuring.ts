@@ -3,7 +3,7 @@
 import { useEffect, useState } from 'react'
 import { newId } from '@/lib/db/id'
 import { fetcher, send } from '@/lib/http/fetcher'
-import { photoKeys } from '@/lib/photo/schema'
+import { photoKeys } from '@/lib/photo/keys'
 import type { PhotoProposal } from '@/lib/science/photo-layers/propose'
 import { measuringCopy, sizedCopy, type MeasuringCopy } from './measuring-copy'
 

@@ -7,7 +7,7 @@ import { Dialog } from '@/components/ui/dialog'
 import { ErrorNote } from '@/components/ui/error-note'
 import { toast } from '@/components/ui/toast'
 import { send } from '@/lib/http/fetcher'
-import { protocolKeys } from '@/lib/protocol/schema'
+import { protocolKeys } from '@/lib/protocol/keys'
 
 type Props = {
   code: string

@@ -16,7 +16,7 @@ import {
   type Emulsion,
   type Purpose,
 } from '@/lib/protocol/rules/ready-made'
-import { protocolKeys } from '@/lib/protocol/schema'
+import { protocolKeys } from '@/lib/protocol/keys'
 
 /** A ready-made protocol as a first version that the lab then owns and edits. */
 export function TakeReadyMade({

@@ -17,7 +17,7 @@ import { dayText } from '@/lib/report/rules'
 import type { CaseDetail } from '@/lib/shelf-case/queries/read'
 import type { Computed } from '@/lib/shelf-case/rules/build'
 import { caseHeadline } from '@/lib/shelf-case/rules/words'
-import { caseKey } from '@/lib/shelf-case/schema'
+import { caseKey } from '@/lib/shelf-case/keys'
 
 type Props = {
   code: string

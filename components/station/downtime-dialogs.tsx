@@ -11,7 +11,7 @@ import { ClientError, send } from '@/lib/http/fetcher'
 import type { Downtime, TouchedPull } from '@/lib/station/queries/downtimes'
 import { periodText } from '@/lib/station/rules/downtime'
 import type { Leaving } from '@/lib/station/rules/occupancy'
-import { stationKeys } from '@/lib/station/schema'
+import { stationKeys } from '@/lib/station/keys'
 import { Touched } from './touched'
 
 type Station = { id: string; name: string }

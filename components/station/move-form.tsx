@@ -11,7 +11,7 @@ import type { StandingJar } from '@/lib/station/queries/places'
 import type { StationRow } from '@/lib/station/queries/stations'
 import { moveEffects, targetsFor, type SeriesPlace } from '@/lib/station/rules/moves'
 import { capacityOf } from '@/lib/station/rules/places'
-import { stationKeys } from '@/lib/station/schema'
+import { stationKeys } from '@/lib/station/keys'
 import { degrees } from '@/lib/study/rules/finding'
 import { counted } from '@/lib/study/rules/words'
 

@@ -13,7 +13,7 @@ import { toast } from '@/components/ui/toast'
 import { newId } from '@/lib/db/id'
 import { ClientError, send } from '@/lib/http/fetcher'
 import type { StationPage } from '@/lib/station/queries/stations'
-import { stationKeys } from '@/lib/station/schema'
+import { stationKeys } from '@/lib/station/keys'
 
 type Station = Omit<StationPage, 'studies'>
 type Props = { station: Station | null; nextOrder: number; onClose: () => void; onDone: () => void }

@@ -13,7 +13,7 @@ import { newId } from '@/lib/db/id'
 import { fetcher } from '@/lib/http/fetcher'
 import { sideOf } from '@/lib/science/temperature-log'
 import type { stationRecord } from '@/lib/station/queries/record'
-import { stationKeys } from '@/lib/station/schema'
+import { stationKeys } from '@/lib/station/keys'
 import { readDecimal } from '@/lib/number/rules'
 
 type Props = {

@@ -12,7 +12,7 @@ import { toast } from '@/components/ui/toast'
 import { newId } from '@/lib/db/id'
 import { emulsionTypes, type EmulsionType } from '@/lib/formula/schema'
 import { ClientError, send } from '@/lib/http/fetcher'
-import { referenceKeys } from '@/lib/reference/schema'
+import { referenceKeys } from '@/lib/reference/keys'
 
 /** A bought-in product, of which a name and a lot are known and no formula. */
 export function AddReference({ onAdded }: { onAdded: (id: string) => void }) {

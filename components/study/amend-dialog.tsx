@@ -24,7 +24,8 @@ import type { StudyStationRow } from '@/lib/study/queries/head'
 import type { ShownStudy } from '@/lib/study/queries/sheet'
 import { degrees } from '@/lib/study/rules/finding'
 import { withVariant } from '@/lib/study/rules/words'
-import { studyKeys, type Amendment } from '@/lib/study/schema'
+import { studyKeys } from '@/lib/study/keys'
+import type { Amendment } from '@/lib/study/schema'
 
 type Props = { study: ShownStudy; stations: StudyStationRow[]; onClose: () => void }
 type Kind = Amendment['kind']

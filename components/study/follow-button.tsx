@@ -5,7 +5,7 @@ import { Button } from '@/components/ui/button'
 import { sentenceOf } from '@/components/ui/error-note'
 import { toast } from '@/components/ui/toast'
 import { send } from '@/lib/http/fetcher'
-import { studyKeys } from '@/lib/study/schema'
+import { studyKeys } from '@/lib/study/keys'
 
 /** Whoever follows a study gets a mail about its flags. */
 export function FollowButton({ code, isFollowing }: { code: string; isFollowing: boolean }) {

@@ -11,7 +11,8 @@ import { newId } from '@/lib/db/id'
 import { ClientError, send } from '@/lib/http/fetcher'
 import { readDecimal } from '@/lib/number/rules'
 import type { OutsideResult } from '@/lib/outside/queries'
-import { outcomes, outsideKeys } from '@/lib/outside/schema'
+import { outsideKeys } from '@/lib/outside/keys'
+import { outcomes } from '@/lib/outside/schema'
 import { outsideTests } from '@/lib/protocol/schema'
 
 type Props = {

@@ -1,7 +1,7 @@
 import Link from 'next/link'
 import type { TimeScale } from '@/components/charts/time-scale'
 import { StationLabel } from '@/components/ui/station-label'
-import { photoKeys } from '@/lib/photo/schema'
+import { photoKeys } from '@/lib/photo/keys'
 import type { CurvesPage } from '@/lib/study/queries/curves'
 import { degrees } from '@/lib/study/rules/finding'
 

@@ -12,7 +12,7 @@ import { toast } from '@/components/ui/toast'
 import { newId } from '@/lib/db/id'
 import { ClientError, send } from '@/lib/http/fetcher'
 import { attributeName, attributeOf } from '@/lib/reading/schema/attributes'
-import { readingKeys } from '@/lib/reading/schema/change'
+import { readingKeys } from '@/lib/reading/keys'
 import type { ReadingChain } from '@/lib/study/queries/readings'
 
 type Reading = ReadingChain['current']

@@ -6,7 +6,8 @@ import { FigureDetails, FigureFactsWait } from '@/components/ui/figure-details'
 import { FigureFactsPanel } from '@/components/ui/figure-facts'
 import { fetcher } from '@/lib/http/fetcher'
 import type { FigureFacts } from '@/lib/science/methods/method'
-import { studyKeys, type SeriesAddress } from '@/lib/study/schema'
+import { studyKeys } from '@/lib/study/keys'
+import type { SeriesAddress } from '@/lib/study/schema'
 import type { ReactNode } from 'react'
 
 type Props = {

@@ -11,7 +11,7 @@ import { toast } from '@/components/ui/toast'
 import { send } from '@/lib/http/fetcher'
 import type { StudyStationRow } from '@/lib/study/queries/head'
 import type { ShownStudy } from '@/lib/study/queries/sheet'
-import { studyKeys } from '@/lib/study/schema'
+import { studyKeys } from '@/lib/study/keys'
 import { AmendDialog } from './amend-dialog'
 
 /** What a formulator does with a running study as a whole. */

@@ -10,7 +10,8 @@ import { Heading } from '@/components/ui/heading'
 import { Select } from '@/components/ui/select'
 import { genericGrids, gridName, labelsPerSheet, papers, type LabelGrid } from '@/lib/label/rules/grid'
 import { chooseJars, labelledJars, sheetsOf } from '@/lib/label/rules/choose'
-import { labelKeys, ownGridKey, type LabelChoice } from '@/lib/label/schema'
+import { labelKeys } from '@/lib/label/keys'
+import { ownGridKey, type LabelChoice } from '@/lib/label/schema'
 
 export type LabelledJar = {
   code: string

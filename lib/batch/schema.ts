@@ -219,10 +219,3 @@ export const batchPhotoAddress = batchAddress.extend({ id: z.uuid() })
 /** Fields of the form that carries the picture. */
 export const batchPhotoFields = deviceTimes.extend({ id: z.uuid(), note: text(500) })
 export type BatchPhotoFields = z.infer<typeof batchPhotoFields>
-
-export const batchPhotoKeys = {
-  add: (code: string) => `/api/batches/${encodeURIComponent(code)}/photos`,
-  preview: (code: string, id: string) => `${batchPhotoKeys.add(code)}/${id}/preview`,
-  original: (code: string, id: string) => `${batchPhotoKeys.add(code)}/${id}/original`,
-}
-export const batchKey = (code: string) => `/api/batches/${encodeURIComponent(code)}`

@@ -2,10 +2,3 @@ import * as z from '@/lib/http/zod'
 
 export const benchDay = z.object({ today: z.iso.date().optional() })
 export const benchJarAddress = z.object({ code: z.string().trim().min(1).max(60) })
-
-export const benchKeys = {
-  today: '/api/bench',
-  days: '/api/bench/days',
-  revision: '/api/bench/revision',
-  jar: (code: string) => `/api/bench/${encodeURIComponent(code)}`,
-}

@@ -75,5 +75,3 @@ export const newCalibration = z.object({
 })
 export type NewCalibration = z.input<typeof newCalibration>
 export type CalibrationCheck = z.output<typeof newCalibration>['check']
-
-export const calibrationKeys = { list: '/api/calibrations' }

@@ -8,5 +8,3 @@ export const clientToRename = z.object({ version: z.number().int(), name })
 
 export type ClientToAdd = z.infer<typeof clientToAdd>
 export type ClientToRename = z.infer<typeof clientToRename>
-
-export const clientsKey = '/api/clients'

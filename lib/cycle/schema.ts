@@ -64,10 +64,3 @@ export type CyclePressInput = z.input<typeof cyclePress>
 export type CyclePressed = z.output<typeof cyclePress>
 
 export const cycleFilter = z.object({ studyStation: z.uuid() })
-
-export const cycleKeys = {
-  list: (studyStationId: string) => `/api/cycles?studyStation=${studyStationId}`,
-  log: '/api/cycles',
-  board: '/api/cycles/board',
-  press: '/api/cycles/presses',
-}

@@ -9,9 +9,3 @@ export const dayReview = z.object({
   remark: z.string().trim().max(1000).default(''),
 })
 export type DayReview = z.output<typeof dayReview>
-
-export const dayKeys = {
-  all: '/api/days',
-  one: (day: string) => `/api/days/${day}`,
-  reviews: (day: string) => `/api/days/${day}/reviews`,
-}

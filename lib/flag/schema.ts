@@ -37,11 +37,3 @@ export type FlagComment = z.output<typeof flagComment>
 export type FlagAnswer = z.output<typeof flagAnswer>
 export type FlagClosing = z.output<typeof flagClosing>
 export type FlagSettling = z.output<typeof flagSettling>
-
-export const flagKeys = {
-  one: (number: number) => `/api/flags/${number}`,
-  comment: (number: number) => `/api/flags/${number}/comments`,
-  answer: (number: number) => `/api/flags/${number}/answer`,
-  close: (number: number) => `/api/flags/${number}/close`,
-  setAside: (number: number) => `/api/flags/${number}/set-aside`,
-}

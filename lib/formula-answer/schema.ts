@@ -18,5 +18,3 @@ export const formulaAnswerInput = z.object({
   askedAbout: z.string().max(200_000),
 })
 export type FormulaAnswerInput = z.output<typeof formulaAnswerInput>
-
-export const formulaAnswersKey = (code: string) => `/api/formulas/${encodeURIComponent(code)}/answers`

@@ -209,8 +209,3 @@ export const compareQuery = z.object({
 function isOnce(rows: { id: string }[]): boolean {
   return new Set(rows.map((row) => row.id)).size === rows.length
 }
-
-export const formulaKey = (code: string, number?: number) =>
-  `/api/formulas/${encodeURIComponent(code)}${number ? `?version=${number}` : ''}`
-export const compareAddress = (codes: readonly string[]) =>
-  `/formulas/compare?${new URLSearchParams(codes.map((code) => ['code', code]))}`

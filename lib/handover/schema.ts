@@ -11,8 +11,3 @@ export type HandoverNote = z.output<typeof handoverNote>
 export const handoverAddress = z.object({ id: z.uuid() })
 /** `id` of the entry that says so. */
 export const readHandover = z.object({ id: z.uuid() })
-
-export const handoverKeys = {
-  all: '/api/handovers',
-  read: (id: string) => `/api/handovers/${id}/read`,
-}

@@ -16,8 +16,3 @@ export const newHolidays = z.object({
 export type NewHolidays = z.input<typeof newHolidays>
 
 export const holidayAddress = z.object({ id: z.uuid() })
-
-export const holidayKeys = {
-  list: '/api/holidays',
-  one: (id: string) => `/api/holidays/${id}`,
-}

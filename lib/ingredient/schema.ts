@@ -148,9 +148,3 @@ export const ingredientIds = z.object({
     .transform((ids) => (Array.isArray(ids) ? ids : [ids]))
     .refine((ids) => ids.length <= 200, 'At most 200 ingredients are looked up at once.'),
 })
-
-export const ingredientsListKey = '/api/ingredients'
-export const ingredientsKey = (q: string) => `/api/ingredients?q=${encodeURIComponent(q)}`
-export const ingredientKey = (id: string) => `/api/ingredients/${id}`
-export const ingredientFactsKey = (ids: readonly string[]) =>
-  `/api/ingredients/facts?${new URLSearchParams(ids.map((id) => ['id', id]))}`

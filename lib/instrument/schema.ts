@@ -88,9 +88,3 @@ export type Reached = {
 }
 
 export const instrumentAddress = z.object({ id: z.uuid() })
-
-export const instrumentKeys = {
-  list: '/api/instruments',
-  one: (id: string) => `/api/instruments/${id}`,
-  checks: (id: string) => `/api/instruments/${id}/checks`,
-}

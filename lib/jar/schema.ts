@@ -40,8 +40,3 @@ export type NotedMishap = {
   alsoMissed: number
   follows: WhatFollows | null
 }
-
-export const jarKeys = {
-  mishaps: (code: string) => `/api/jars/${encodeURIComponent(code)}/mishaps`,
-  one: (code: string) => `/api/jars/${encodeURIComponent(code)}`,
-}

@@ -39,8 +39,6 @@ export const labToChange = z.object({
 export type LabToSetUp = z.infer<typeof labToSetUp>
 export type LabToChange = z.infer<typeof labToChange>
 
-export const labKey = '/api/lab'
-
 function isTimeZone(name: string): boolean {
   try {
     return new Intl.DateTimeFormat('en', { timeZone: name }).resolvedOptions().timeZone.length > 0

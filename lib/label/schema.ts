@@ -36,17 +36,3 @@ export const labelChoice = z.object({
   jars: z.string().trim().max(6000).default(''),
 })
 export type LabelChoice = z.output<typeof labelChoice>
-
-export const labelKeys = {
-  page: (code: string, choice: Partial<LabelChoice> = {}) =>
-    `/studies/${encodeURIComponent(code)}/labels${questionOf(choice)}`,
-  pdf: (code: string, choice: LabelChoice) =>
-    `/api/studies/${encodeURIComponent(code)}/labels${questionOf(choice)}`,
-}
-
-function questionOf(choice: Partial<LabelChoice>): string {
-  const given = Object.entries(choice).flatMap(([key, value]) =>
-    value === '' ? [] : [[key, String(value)] as [string, string]],
-  )
-  return given.length === 0 ? '' : `?${new URLSearchParams(given)}`
-}

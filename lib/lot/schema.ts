@@ -32,5 +32,3 @@ export const changedLot = z.object({
   isUsedUp: z.boolean(),
 })
 export const lotAddress = z.object({ id: z.uuid() })
-
-export const lotKeys = { list: '/api/lots', one: (id: string) => `/api/lots/${id}` }

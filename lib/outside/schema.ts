@@ -38,8 +38,3 @@ export const outsideFields = z
 export type OutsideFields = z.output<typeof outsideFields>
 
 export const outsideAddress = z.object({ id: z.uuid() })
-
-export const outsideKeys = {
-  ofStudy: (study: string) => `/api/studies/${encodeURIComponent(study)}/outside-results`,
-  document: (id: string) => `/api/outside-results/${id}/document`,
-}

@@ -55,6 +55,3 @@ export const personToChange = z
 
 export type PersonToInvite = z.infer<typeof personToInvite>
 export type PersonToChange = z.infer<typeof personToChange>
-
-export const peopleKey = '/api/people'
-export const personKey = (id: string) => `/api/people/${id}`

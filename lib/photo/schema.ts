@@ -18,14 +18,3 @@ export const previewWidth = 480
 /** Longer side of a measuring copy. */
 export const copyPixels = 2000
 export const maxCopyBytes = 6 * 1024 * 1024
-
-export const photoKeys = {
-  add: '/api/photos',
-  ofStudy: (study: string) => `/api/photos?study=${encodeURIComponent(study)}`,
-  ofJar: (study: string, jar: string) =>
-    `/api/photos?study=${encodeURIComponent(study)}&jar=${encodeURIComponent(jar)}`,
-  preview: (id: string) => `/api/photos/${id}/preview`,
-  copy: (id: string) => `/api/photos/${id}/copy`,
-  proposal: (id: string) => `/api/photos/${id}/proposal`,
-  original: (id: string) => `/api/photos/${id}/original`,
-}

@@ -187,12 +187,3 @@ export const approvedVersion = z.object({ version: z.number().int().positive() }
 
 export const protocolAddress = z.object({ code: z.string().max(40) })
 export const protocolVersionAddress = protocolAddress.extend({ number: z.coerce.number().int().positive() })
-
-export const protocolKeys = {
-  list: '/api/protocols',
-  one: (code: string) => `/api/protocols/${encodeURIComponent(code)}`,
-  versions: (code: string) => `/api/protocols/${encodeURIComponent(code)}/versions`,
-  version: (code: string, number: number) => `/api/protocols/${encodeURIComponent(code)}/versions/${number}`,
-  approve: (code: string, number: number) =>
-    `/api/protocols/${encodeURIComponent(code)}/versions/${number}/approve`,
-}

@@ -15,5 +15,3 @@ export const newReference = z.object({
   note: z.string().trim().max(2000).default(''),
 })
 export type NewReference = z.output<typeof newReference>
-
-export const referenceKeys = { add: '/api/references' }

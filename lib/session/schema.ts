@@ -19,5 +19,3 @@ export const resetToFinish = invitationToAccept
 export type PersonToSignIn = z.infer<typeof personToSignIn>
 export type PasswordToChange = z.infer<typeof passwordToChange>
 export type InvitationToAccept = z.infer<typeof invitationToAccept>
-
-export const sessionKey = '/api/session'

@@ -57,5 +57,3 @@ export const caseSignature = z
     message: 'Say what must change before it can be signed.',
   })
 export type CaseSignature = z.infer<typeof caseSignature>
-
-export const caseKey = (code: string) => `/api/cases/${code}`

@@ -166,13 +166,3 @@ export const stationRecordPeriod = z.object({
   from: z.iso.datetime({ offset: true }).optional(),
   to: z.iso.datetime({ offset: true }).optional(),
 })
-
-export const stationKeys = {
-  list: '/api/stations',
-  one: (id: string) => `/api/stations/${id}`,
-  record: (id: string) => `/api/stations/${id}/temperatures`,
-  loggerFiles: (id: string) => `/api/stations/${id}/logger-files`,
-  moves: (id: string) => `/api/stations/${id}/moves`,
-  downtimes: (id: string) => `/api/stations/${id}/downtimes`,
-  cancelDowntime: (id: string, downtimeId: string) => `/api/stations/${id}/downtimes/${downtimeId}/cancel`,
-}

@@ -3,7 +3,7 @@ import { SWRConfig } from 'swr'
 import { BenchApp } from '@/components/bench/bench-app'
 import { may } from '@/lib/auth/permissions'
 import { todaysBench } from '@/lib/bench/queries/today'
-import { benchKeys } from '@/lib/bench/schema'
+import { benchKeys } from '@/lib/bench/keys'
 import { page } from '@/lib/http/page'
 
 export const permission = 'bench.read'

@@ -3,7 +3,7 @@ import { SWRConfig } from 'swr'
 import { CycleBoard } from '@/components/cycle/cycle-board'
 import { may } from '@/lib/auth/permissions'
 import { cycleBoard } from '@/lib/cycle/queries/board'
-import { cycleKeys } from '@/lib/cycle/schema'
+import { cycleKeys } from '@/lib/cycle/keys'
 import { page } from '@/lib/http/page'
 
 export const permission = 'bench.read'

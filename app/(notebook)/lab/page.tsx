@@ -4,9 +4,9 @@ import { WorkloadView } from '@/components/lab/workload-view'
 import { may } from '@/lib/auth/permissions'
 import { page } from '@/lib/http/page'
 import { listPullsOnClosedDays } from '@/lib/pull/queries/on-closed-days'
-import { pullKeys } from '@/lib/pull/schema'
+import { pullKeys } from '@/lib/pull/keys'
 import { getWorkload } from '@/lib/study/queries/workload'
-import { workloadKey } from '@/lib/study/schema'
+import { workloadKey } from '@/lib/study/keys'
 
 export const permission = 'bench.read'
 export const metadata: Metadata = { title: 'Weeks ahead' }

@@ -23,10 +23,3 @@ export const readingFilter = z.object({
   study: z.string().trim().min(1).max(40),
   attribute: z.string().max(44).optional(),
 })
-
-export const readingKeys = {
-  ofStudy: (study: string) => `/api/readings?study=${encodeURIComponent(study)}`,
-  history: (id: string) => `/api/readings/${id}`,
-  correct: (id: string) => `/api/readings/${id}/correct`,
-  void: (id: string) => `/api/readings/${id}/void`,
-}

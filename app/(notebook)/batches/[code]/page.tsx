@@ -4,7 +4,7 @@ import { SWRConfig } from 'swr'
 import { BatchView, type BatchPart } from '@/components/batch/batch-view'
 import { may } from '@/lib/auth/permissions'
 import { getBatch } from '@/lib/batch/queries/get-batch'
-import { batchKey } from '@/lib/batch/schema'
+import { batchKey } from '@/lib/batch/keys'
 import { AppError } from '@/lib/http/errors'
 import { page } from '@/lib/http/page'
 

@@ -5,7 +5,7 @@ import { BenchApp } from '@/components/bench/bench-app'
 import { may } from '@/lib/auth/permissions'
 import { getBenchJar } from '@/lib/bench/queries/jar'
 import { todaysBench } from '@/lib/bench/queries/today'
-import { benchKeys } from '@/lib/bench/schema'
+import { benchKeys } from '@/lib/bench/keys'
 import { AppError } from '@/lib/http/errors'
 import { page } from '@/lib/http/page'
 

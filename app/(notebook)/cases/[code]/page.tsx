@@ -7,7 +7,7 @@ import { AppError } from '@/lib/http/errors'
 import { page } from '@/lib/http/page'
 import { computeFor, getCase, readingAuthors } from '@/lib/shelf-case/queries/read'
 import { whyNotSign } from '@/lib/shelf-case/rules/refusals'
-import { caseKey } from '@/lib/shelf-case/schema'
+import { caseKey } from '@/lib/shelf-case/keys'
 import { demoPassword } from '@/lib/lab/rules'
 
 export const permission = 'case.read'

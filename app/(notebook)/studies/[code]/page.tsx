@@ -4,7 +4,7 @@ import { studyRights } from '@/components/study/rights'
 import { StudySheet } from '@/components/study/study-sheet'
 import { page } from '@/lib/http/page'
 import { getSheet } from '@/lib/study/queries/sheet'
-import { studyKeys } from '@/lib/study/schema'
+import { studyKeys } from '@/lib/study/keys'
 import { found } from '../found'
 
 export const permission = 'study.read'

@@ -1,0 +1,6 @@
+export const cycleKeys = {
+  list: (studyStationId: string) => `/api/cycles?studyStation=${studyStationId}`,
+  log: '/api/cycles',
+  board: '/api/cycles/board',
+  press: '/api/cycles/presses',
+}

@@ -1,0 +1,1 @@
+export const findKey = (q: string) => `/api/find?${new URLSearchParams({ q })}`

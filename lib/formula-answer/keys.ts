@@ -1,0 +1,1 @@
+export const formulaAnswersKey = (code: string) => `/api/formulas/${encodeURIComponent(code)}/answers`

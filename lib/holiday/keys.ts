@@ -1,0 +1,4 @@
+export const holidayKeys = {
+  list: '/api/holidays',
+  one: (id: string) => `/api/holidays/${id}`,
+}

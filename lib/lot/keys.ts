@@ -1,0 +1,1 @@
+export const lotKeys = { list: '/api/lots', one: (id: string) => `/api/lots/${id}` }

@@ -1,0 +1,2 @@
+export const peopleKey = '/api/people'
+export const personKey = (id: string) => `/api/people/${id}`

@@ -1,0 +1,1 @@
+export const sessionKey = '/api/session'

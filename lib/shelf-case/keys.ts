@@ -1,0 +1,1 @@
+export const caseKey = (code: string) => `/api/cases/${code}`
