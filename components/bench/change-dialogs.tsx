@@ -13,6 +13,7 @@ import type { BenchJarPage } from '@/lib/bench/queries/jar'
 import { newId } from '@/lib/db/id'
 import { ClientError, send } from '@/lib/http/fetcher'
 import { readingKeys } from '@/lib/reading/keys'
+import { conditionKeys } from '@/lib/reading/rules/conditions'
 
 const quickReasons = ['misread', 'typed wrong', 'another jar', 'instrument was not ready'] as const
 
@@ -118,9 +119,8 @@ export function CorrectDialog({ jar, reading, onClose, onDone }: Props) {
 }
 
 /** Under which it was read; a correction of the number changes none of them. */
-function conditionsOf({ detail }: JarReading) {
-  const keys = ['spindle', 'rpm', 'seconds', 'path', 'restMinutes', 'sampleTemperatureC']
-  return Object.fromEntries(keys.map((key) => [key, detail[key] ?? null]))
+function conditionsOf({ attribute, detail }: JarReading) {
+  return Object.fromEntries(conditionKeys(attribute).map((key) => [key, detail[key] ?? null]))
 }
 
 type VoidProps = { id: string; name: string; onClose: () => void; onDone: () => void }

@@ -9,12 +9,21 @@ import { Dialog } from '@/components/ui/dialog'
 import { Field } from '@/components/ui/field'
 import { Select } from '@/components/ui/select'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
-import { paths, type Conditions, type Path } from '@/lib/reading/rules/conditions'
+import {
+  conditionKeys,
+  paths,
+  phMethods,
+  type Conditions,
+  type Path,
+  type PhMethod,
+} from '@/lib/reading/rules/conditions'
 import { readTyped } from '@/lib/reading/schema/typed'
 
 type Props = { jar: BenchJarPage; entry: JarEntry; slot: Slot; onClose: () => void }
 
 const numbers = [
+  ['extractParts', 'Extract, 1 to'],
+  ['extractMinutes', 'It stood, min'],
   ['rpm', 'Speed, rpm'],
   ['seconds', 'Read after, s'],
   ['restMinutes', 'Rest before it, min'],
@@ -26,11 +35,14 @@ type NumberKey = (typeof numbers)[number][0]
 export function ConditionsDialog({ jar, entry, slot, onClose }: Props) {
   const used = conditionsUsed(slot, entry.draft)
   const isViscosity = slot.field.kind === 'torque'
-  const shown = numbers.filter(([key]) => isViscosity || key === 'sampleTemperatureC')
+  const asked = conditionKeys(slot.field.attribute)
+  const shown = numbers.filter(([key]) => asked.includes(key))
   const [texts, setTexts] = useState(
     () =>
       Object.fromEntries(shown.map(([key]) => [key, String(used[key] ?? '')])) as Record<NumberKey, string>,
   )
+  const [spring, setSpring] = useState(used.spring ?? '')
+  const [phMethod, setPhMethod] = useState<PhMethod | ''>(used.phMethod ?? '')
   const [spindle, setSpindle] = useState(used.spindle ?? '')
   const [path, setPath] = useState<Path | ''>(used.path ?? '')
   const [isDirect, setDirect] = useState(entry.draft.direct.includes(slot.field.attribute))
@@ -43,7 +55,9 @@ export function ConditionsDialog({ jar, entry, slot, onClose }: Props) {
 
   function typed(): Partial<Conditions> {
     const said = Object.fromEntries(shown.map(([key]) => [key, readTyped(texts[key])]))
-    return isViscosity ? { ...said, spindle: spindle || null, path: path || null } : said
+    return isViscosity
+      ? { ...said, spring: spring.trim() || null, spindle: spindle || null, path: path || null }
+      : { ...said, phMethod: phMethod || null }
   }
 
   return (
@@ -51,7 +65,7 @@ export function ConditionsDialog({ jar, entry, slot, onClose }: Props) {
       isOpen
       onClose={onClose}
       title={`How ${slot.field.label} is read`}
-      sentence={`The method says: ${slot.field.method}. What differs from the start is a doubt on the reading.`}
+      sentence={`The protocol says: ${slot.field.method || 'nothing'}. What differs from the start is a doubt on the reading.`}
       density="bench"
       acts={
         <>
@@ -95,8 +109,18 @@ export function ConditionsDialog({ jar, entry, slot, onClose }: Props) {
             />
           </div>
         </>
-      ) : null}
+      ) : (
+        <Select
+          label="How it is brought to the electrode"
+          density="bench"
+          value={phMethod}
+          empty="not said"
+          options={phMethods.map((one) => ({ value: one, label: one }))}
+          onPick={(picked) => setPhMethod(phMethods.find((one) => one === picked) ?? '')}
+        />
+      )}
       <div className="grid gap-3 sm:grid-cols-2">
+        {isViscosity ? <Field label="Spring" density="bench" value={spring} onText={setSpring} /> : null}
         {shown.map(([key, label]) => (
           <Field
             key={key}

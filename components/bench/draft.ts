@@ -1,7 +1,7 @@
 import type { BenchField } from '@/lib/bench/rules'
 import { kindEntry, layersEntry } from '@/components/bench/kind-entry'
 import { newId } from '@/lib/db/id'
-import type { Conditions } from '@/lib/reading/rules/conditions'
+import { conditionKeys, type Conditions } from '@/lib/reading/rules/conditions'
 import type { EntryDetail } from '@/lib/reading/schema/entry'
 import type { PhotoLinesOfReading } from '@/lib/reading/schema/photo-lines'
 import { readTyped } from '@/lib/reading/schema/typed'
@@ -122,11 +122,10 @@ export function entriesOf(
 
 /** The initial's conditions with what is said to differ; only what is known of them. */
 export function conditionsUsed(slot: Slot, draft: Draft): EntryDetail {
-  const isViscosity = slot.field.kind === 'torque'
-  if (!isViscosity && slot.field.attribute !== 'ph') return {}
-  const used = { ...slot.field.conditions, ...draft.conditions[slot.field.attribute] }
-  const known = Object.entries(used).filter(([, value]) => value !== null)
-  return Object.fromEntries(isViscosity ? known : known.filter(([key]) => key === 'sampleTemperatureC'))
+  const { attribute, conditions } = slot.field
+  const used: Partial<Conditions> = { ...conditions, ...draft.conditions[attribute] }
+  const known = conditionKeys(attribute).filter((key) => (used[key] ?? null) !== null)
+  return Object.fromEntries(known.map((key) => [key, used[key]]))
 }
 
 /** Every entry gets its id once, when it is first typed. */

@@ -6,7 +6,7 @@ import { instrumentKind } from '@/components/bench/day-instrument'
 import { conditionsUsed, type Slot } from '@/components/bench/draft'
 import type { JarEntry } from '@/components/bench/use-jar-entry'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
-import type { EntryDetail } from '@/lib/reading/schema/entry'
+import { conditionKeys, conditionWords } from '@/lib/reading/rules/conditions'
 import { shortDay } from '@/lib/report/rules'
 
 type Props = { jar: BenchJarPage; entry: JarEntry; slot: Slot }
@@ -18,7 +18,7 @@ export function UsedWith({ jar, entry, slot }: Props) {
   const instruments = jar.instruments.filter((one) => one.kind === kind)
   const chosen = entry.instrumentOf(slot)
   const used = conditionsUsed(slot, entry.draft)
-  const hasConditions = slot.field.kind === 'torque' || slot.field.attribute === 'ph'
+  const hasConditions = conditionKeys(slot.field.attribute).length > 0
   if (instruments.length === 0 && !hasConditions)
     return (
       <p className="text-17 text-soft">
@@ -53,7 +53,7 @@ export function UsedWith({ jar, entry, slot }: Props) {
           onClick={() => setChanging(true)}
           className="min-h-16 min-w-0 flex-1 rounded border-2 border-transparent text-left text-17 leading-tight text-soft underline decoration-dotted underline-offset-4"
         >
-          {conditionsText(slot, used)}
+          {conditionWords(used) || slot.field.method || 'Conditions'}
           {entry.isChanged(slot) ? <b className="text-ink">, not as at the start</b> : ': as at the start'}
         </button>
       ) : null}
@@ -71,23 +71,4 @@ function stateOf({ isOverdue, dueOn, result, hasFailedCheck }: BenchJarPage['ins
   return isOverdue
     ? { isBad: true, says: 'calibration overdue' }
     : { isBad: false, says: `good until ${shortDay(dueOn)}` }
-}
-
-function conditionsText(slot: Slot, used: EntryDetail): string {
-  if (slot.field.kind !== 'torque') {
-    const { sampleTemperatureC } = used
-    const asked = slot.field.conditions.sampleTemperatureC
-    if (sampleTemperatureC === undefined || sampleTemperatureC === asked) return slot.field.method
-    return `${slot.field.method}; sample at ${sampleTemperatureC} °C`
-  }
-  return [
-    used.spindle,
-    used.rpm === undefined ? '' : `${used.rpm} rpm`,
-    used.seconds === undefined ? '' : `${used.seconds} s`,
-    used.path ?? '',
-    used.restMinutes === undefined ? '' : `rested ${used.restMinutes} min`,
-    used.sampleTemperatureC === undefined ? '' : `sample ${used.sampleTemperatureC} °C`,
-  ]
-    .filter(Boolean)
-    .join(', ')
 }

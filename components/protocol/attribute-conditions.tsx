@@ -3,9 +3,11 @@ import { Field } from '@/components/ui/field'
 import { Select } from '@/components/ui/select'
 import { dropletMeasureWords } from '@/lib/protocol/rules/words'
 import { dropletMeasures, type PlannedAttribute } from '@/lib/protocol/schema'
+import { conditionKeys } from '@/lib/reading/rules/conditions'
 import { centrifuge } from '@/lib/science/centrifuge'
 import { thousands } from '@/lib/science/methods/thousands'
 import { NumberPart } from './number-part'
+import { ReadingConditions } from './reading-conditions'
 
 type Props = { planned: PlannedAttribute; onChange: (more: Partial<PlannedAttribute>) => void }
 
@@ -14,6 +16,9 @@ export function AttributeConditions({ planned, onChange }: Props) {
   return (
     <div className="mt-3 flex flex-wrap items-end gap-3 empty:hidden sm:ml-[132px]">
       {planned.attribute === 'viscosity' ? <Spindle planned={planned} onChange={onChange} /> : null}
+      {conditionKeys(planned.attribute).length > 0 ? (
+        <ReadingConditions planned={planned} onChange={onChange} />
+      ) : null}
       {planned.attribute === 'separation' ? (
         <NumberPart
           label="The ruler tells, mm"

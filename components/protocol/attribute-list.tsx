@@ -1,6 +1,7 @@
 import { Ledger } from '@/components/ui/ledger'
 import { toleranceText } from '@/lib/protocol/rules/words'
 import type { PlannedAttribute } from '@/lib/protocol/schema'
+import { methodText } from '@/lib/reading/rules/conditions'
 import { attributeOf, attributeName } from '@/lib/reading/schema/attributes'
 import { viscosityFactor } from '@/lib/science/viscosity'
 import { shownValue } from '@/lib/study/rules/words'
@@ -33,7 +34,7 @@ export function AttributeList({ attributes }: { attributes: PlannedAttribute[] }
           cell: (row) =>
             row.viscosity ? (
               <>
-                {row.method}
+                {methodText(row)}
                 <span className="text-soft">
                   ,{' '}
                   {shownValue(
@@ -44,7 +45,7 @@ export function AttributeList({ attributes }: { attributes: PlannedAttribute[] }
                 </span>
               </>
             ) : (
-              row.method
+              methodText(row)
             ),
         },
       ]}

@@ -8,6 +8,7 @@ import { readDecimal } from '@/lib/number/rules'
 import { Section } from '@/components/ui/section'
 import { Select } from '@/components/ui/select'
 import type { PlannedAttribute, ProtocolPlan } from '@/lib/protocol/schema'
+import { methodText } from '@/lib/reading/rules/conditions'
 import { attributeOf, attributeName, readByText, type AttributeKind } from '@/lib/reading/schema/attributes'
 import { mean } from '@/lib/science/mean'
 import { viscosity } from '@/lib/science/viscosity'
@@ -46,7 +47,7 @@ export function InitialFields({ offer, draft, plan, set, fields }: Props) {
             <div className="flex flex-wrap items-end justify-between gap-3">
               <p>
                 <b className="font-650">{attributeName(planned.attribute)}</b>
-                <span className="block text-13 text-soft">{planned.method}</span>
+                <span className="block text-13 text-soft">{methodText(planned)}</span>
               </p>
               <InstrumentChoice planned={planned} offer={offer} draft={draft} set={set} />
             </div>

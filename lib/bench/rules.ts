@@ -1,6 +1,6 @@
 import { askedAt } from '@/lib/protocol/rules/plan'
 import type { PlannedAttribute, ProtocolPlan } from '@/lib/protocol/schema'
-import { askedConditions, type Conditions } from '@/lib/reading/rules/conditions'
+import { askedConditions, methodText, type Conditions } from '@/lib/reading/rules/conditions'
 import { attributeOf, type Attribute, type AttributeKey } from '@/lib/reading/schema/attributes'
 import { toleranceBand } from '@/lib/science/band'
 import { ScienceError } from '@/lib/science/guard'
@@ -105,7 +105,7 @@ function fieldOf(planned: PlannedAttribute, jar: JarOfBench, values: Values): Be
     words: attribute.words ?? null,
     possible: attribute.possible,
     replicates: jar.asks === 'watch' ? 1 : planned.replicates,
-    method: planned.method,
+    method: methodText(planned),
     viscosity: planned.viscosity ?? null,
     planned,
     initialDetail: atStart?.detail ?? null,

@@ -1,4 +1,5 @@
 import * as z from '@/lib/http/zod'
+import { conditionFields } from '@/lib/reading/schema/conditions'
 import { attributeKey } from '@/lib/reading/schema/attributes'
 import { isOwn, ownAttribute } from '@/lib/reading/schema/own'
 
@@ -36,8 +37,16 @@ const plannedOfAny = z.object({
   isInitialOnly: z.literal(true).optional(),
   tolerance,
   replicates: z.number().int().min(1).max(5),
-  /** Said as it is done: "direct", "extract 1 to 10, 30 minutes", "T-bar C, 10 rpm, 30 s, descending". */
+  /** What the fields do not say of how it is done: "unstirred", "ruler against the closed jar". */
   method: z.string().max(300),
+  /** Of pH and viscosity: readings compare only where these are the same. */
+  conditions: z
+    .object({
+      ...conditionFields,
+      /** Only of a plan that names no spindle. */
+      rpm: z.number().positive().optional(),
+    })
+    .optional(),
   /** For viscosity: factor = spindleConstant / rpm (mPa·s per % torque). */
   viscosity: z
     .object({

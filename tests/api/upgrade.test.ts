@@ -57,6 +57,31 @@ it('D11, R05: a record of the first release is migrated whole, and verifies row 
      values ($1, $2, $3, 1, 5, now(), $4)`,
     [done, batch, step, system],
   )
+  const plan = {
+    attributes: [
+      { attribute: 'ph', method: 'extract 1 to 10 in water, 30 minutes, at 25 °C', replicates: 1 },
+      {
+        attribute: 'viscosity',
+        method: 'T-bar C, 10 rpm, 30 s, descending, unstirred, at 25 °C',
+        viscosity: { spindle: 'T-bar C', spindleConstant: 10000, rpm: 10 },
+      },
+      { attribute: 'separation', method: 'ruler, at 25 °C' },
+    ],
+  }
+  const [protocol, planned, study] = Array.from({ length: 3 }, newId)
+  await write(`insert into protocol (id, code, name, created_by) values ($1, 'OLD', 'screen', $2)`, [
+    protocol,
+    system,
+  ])
+  await write(
+    `insert into protocol_version (id, protocol_id, number, state, plan, created_by) values ($1, $2, 1, 'locked', $3, $4)`,
+    [planned, protocol, JSON.stringify(plan), system],
+  )
+  await write(
+    `insert into study (id, code, title, protocol_version_id, plan, started_at, started_on, end_weeks, fill_g, created_by)
+     values ($1, 'OLD', 'old', $2, $3, now(), now(), 12, 30, $4)`,
+    [study, planned, JSON.stringify(plan), system],
+  )
   await client.query('commit')
 
   expect((await migrate(owner)).length).toBeGreaterThan(0)
@@ -71,6 +96,22 @@ it('D11, R05: a record of the first release is migrated whole, and verifies row 
     [done],
   )
   expect(entries).toEqual([{ kind: 'done', actual_minutes: '5' }])
+  const { rows: plans } = await client.query(
+    'select plan from study union all select plan from protocol_version',
+  )
+  for (const { plan: now } of plans)
+    expect(now.attributes).toEqual([
+      {
+        ...{ attribute: 'ph', method: '', replicates: 1 },
+        conditions: { phMethod: 'extract', extractParts: 10, extractMinutes: 30, sampleTemperatureC: 25 },
+      },
+      {
+        ...plan.attributes[1],
+        method: 'unstirred',
+        conditions: { seconds: 30, path: 'descending', sampleTemperatureC: 25 },
+      },
+      plan.attributes[2],
+    ])
   const { rows: trail } = await client.query(
     `select actor_id, reason from trail where table_name in ('batch_portion', 'batch_step_entry')`,
   )

@@ -8,6 +8,7 @@ import {
   type Emulsion,
   type Purpose,
 } from '@/lib/protocol/rules/ready-made'
+import { methodText } from '@/lib/reading/rules/conditions'
 import { protocolPlan } from '@/lib/protocol/schema'
 
 const every = (Object.keys(purposes) as Purpose[]).flatMap((purpose) =>
@@ -48,6 +49,18 @@ describe('ready-made protocols', () => {
     expect(room.timePoints.map((week) => pullLabel(room, week, plan.endWeeks))).toEqual(
       [3, 6, 9, 12, 18, 24, 36].map((month) => `month ${month}`),
     )
+  })
+
+  it('says in fields under which pH and viscosity are read, in full', () => {
+    const said = (emulsion: Emulsion) =>
+      readyMadePlan('screen', emulsion)
+        .attributes.filter(({ attribute }) => attribute === 'ph' || attribute === 'viscosity')
+        .map(methodText)
+    expect(said('lotion')).toEqual(['direct, at 25 °C', 'disc 4, 20 rpm, after 30 s, fixed, at 25 °C'])
+    expect(said('stiff cream')).toEqual([
+      'extract 1 to 10 in water, 30 min, at 25 °C',
+      'T-bar D, 5 rpm, after 30 s, descending, at 25 °C, unstirred',
+    ])
   })
 })
 

@@ -1,7 +1,12 @@
 import { describe, expect, it } from 'vitest'
 import { claimedInstant } from '@/lib/reading/rules/claimed-time'
 import { cycleDoubts } from '@/lib/cycle/rules/shortfall'
-import { askedConditions } from '@/lib/reading/rules/conditions'
+import {
+  askedConditions,
+  changedConditions,
+  conditionWords,
+  methodText,
+} from '@/lib/reading/rules/conditions'
 import { conditionDoubts } from '@/lib/reading/rules/entry-doubts'
 import { massChangePercent } from '@/lib/science/mass-change'
 import { ImpossibleEntry, type TypedEntry, type ValueContext } from '@/lib/reading/rules/impossible-entry'
@@ -128,14 +133,35 @@ describe('R06: when it was measured', () => {
 
 describe('conditions', () => {
   const initial = askedConditions(
-    { spindle: 'T-bar C', rpm: 10 },
-    { method: 'T-bar D, 5 rpm, 30 s, descending, unstirred, at 25 °C' },
+    { spindle: 'T-bar C', rpm: 10, method: 'T-bar D, 5 rpm, 60 s, fixed' },
+    {
+      viscosity: { spindle: 'T-bar D', rpm: 5 },
+      conditions: { spring: 'medium', seconds: 30, path: 'descending', sampleTemperatureC: 25 },
+    },
   )
-  it('are the initial’s own, and what it does not say is as its method says', () => {
+  it('are the initial’s own, then what the fields of the plan ask for; words of a method are not read', () => {
     expect(initial).toEqual({
-      ...{ spindle: 'T-bar C', rpm: 10, seconds: 30, path: 'descending' },
+      ...{ spring: 'medium', spindle: 'T-bar C', rpm: 10, seconds: 30, path: 'descending' },
       ...{ restMinutes: null, sampleTemperatureC: 25 },
+      ...{ phMethod: null, extractParts: null, extractMinutes: null },
     })
+  })
+  it('are said in the order of the work, with what the method adds', () => {
+    expect(conditionWords(initial)).toBe('spring medium, T-bar C, 10 rpm, after 30 s, descending, at 25 °C')
+    const extract = { phMethod: 'extract', extractParts: 10, extractMinutes: 30, sampleTemperatureC: 25 }
+    expect(methodText({ method: 'decanted', conditions: extract })).toBe(
+      'extract 1 to 10 in water, 30 min, at 25 °C, decanted',
+    )
+    expect(methodText({ method: 'ruler' })).toBe('ruler')
+  })
+  it('of a pH are how it was brought to the electrode: methods never compare [practice]', () => {
+    const asked = askedConditions(null, { conditions: { phMethod: 'extract', extractParts: 10 } })
+    const doubt = (more: object) => changedConditions({ ...asked, ...more }, asked)
+    expect(doubt({})).toBeNull()
+    expect(doubt({ phMethod: 'direct' })).toMatch(
+      /^Measured with the electrode dipped instead of an extract;/,
+    )
+    expect(doubt({ extractParts: 5 })).toMatch(/an extract 1 to 5 instead of 1 to 10/)
   })
   const good = { code: 'V1', dueOn: '2027-01-04', result: 'good' }
   it('are no doubt where they are the initial’s', () => {
@@ -148,6 +174,7 @@ describe('conditions', () => {
     [{ spindle: 'T-bar D' }, /spindle T-bar D instead of the initial's T-bar C/],
     [{ rpm: 20 }, /20 rpm instead of 10/],
     [{ sampleTemperatureC: 26.5 }, /sample at 26.5 °C/],
+    [{ spring: 'strong' }, /spring strong instead of medium/],
     [{ seconds: 60 }, /60 s instead of 30 s/],
     [{ path: 'fixed' as const }, /a fixed spindle instead of a descending one/],
     [{ instrument: { ...good, dueOn: '2026-11-30' } }, /V1 was due on 30 Nov 2026/],

@@ -5,6 +5,7 @@ import type { Db, Trx } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
 import { namedJar } from '@/lib/jar/rules/code'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
+import { methodText } from '@/lib/reading/rules/conditions'
 import { attributeOf } from '@/lib/reading/schema/attributes'
 import type { SeriesFinding } from '@/lib/science/series'
 import { stationWhenRead } from '@/lib/station/queries/stood'
@@ -112,6 +113,7 @@ export async function getFlag(db: Db, _actor: Actor, number: number) {
   const series = await listSeriesThere(db, flag)
   const { plan, ...rest } = flag
   const attribute = attributeOf(flag.attribute, plan)
+  const planned = plan.attributes.find((one) => one.attribute === flag.attribute)
   const station = flag.studyStationId
     ? { temperatureC: flag.temperatureC, isFreezeThaw: flag.isFreezeThaw ?? false }
     : null
@@ -121,7 +123,7 @@ export async function getFlag(db: Db, _actor: Actor, number: number) {
     unit: attribute.unit,
     decimals: attribute.decimals,
     words: attribute.words ?? null,
-    method: plan.attributes.find((planned) => planned.attribute === flag.attribute)?.method ?? '',
+    method: planned ? methodText(planned) : '',
     jarName: flag.jarCode && namedJar(flag.jarCode, station),
     readOn: flag.measuredAt && dayIn(flag.zone, flag.measuredAt),
     today: dayIn(flag.zone, flag.now),

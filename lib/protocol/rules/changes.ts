@@ -1,6 +1,7 @@
 import type { PlannedAttribute, PlannedStation, ProtocolPlan } from '@/lib/protocol/schema'
 import { attributeName } from '@/lib/reading/schema/attributes'
 import { askedAt, stationName } from './plan'
+import { conditionWords, conditionsIn } from '@/lib/reading/rules/conditions'
 import { cycleText, dropletMeasureWords, toleranceText } from './words'
 
 /** What differs between two plans, one sentence a difference, in the order of the plan's own page. */
@@ -140,9 +141,11 @@ function conditionsText({
   rulerMm,
   dropletMeasure,
   centrifuge,
+  conditions,
   isInitialOnly,
 }: PlannedAttribute): string {
   return [
+    conditionWords(conditionsIn({ ...conditions })),
     own?.kind === 'scale' ? own.words.join(', ') : '',
     own?.kind === 'number' ? `${own.lower} to ${own.upper} ${own.unit}, ${own.decimals} decimals`.trim() : '',
     own ? `${own.jar} jar` : '',

@@ -147,7 +147,13 @@ function measurements(emulsion: Emulsion): PlannedAttribute[] {
       attribute: 'ph',
       tolerance: { kind: 'shift', below: isLotion ? 0.3 : 0.5, above: isLotion ? 0.3 : 0.5 },
       replicates: 1,
-      method: isLotion ? 'direct, at 25 °C' : 'extract 1 to 10 in water, 30 minutes, at 25 °C',
+      method: '',
+      conditions: {
+        ...(isLotion
+          ? { phMethod: 'direct' }
+          : { phMethod: 'extract', extractParts: 10, extractMinutes: 30 }),
+        sampleTemperatureC: 25,
+      },
     },
     { attribute: 'viscosity', ...viscosityOf[emulsion], replicates: 1 },
     {
@@ -161,20 +167,26 @@ function measurements(emulsion: Emulsion): PlannedAttribute[] {
   ]
 }
 
-const viscosityOf: Record<Emulsion, Pick<PlannedAttribute, 'tolerance' | 'method' | 'viscosity'>> = {
+const viscosityOf: Record<
+  Emulsion,
+  Pick<PlannedAttribute, 'tolerance' | 'method' | 'viscosity' | 'conditions'>
+> = {
   lotion: {
     tolerance: { kind: 'percent', below: 20, above: 20 },
-    method: 'disc 4, 20 rpm, 30 s, fixed, at 25 °C',
+    method: '',
+    conditions: { seconds: 30, path: 'fixed', sampleTemperatureC: 25 },
     viscosity: { spindle: 'disc 4', spindleConstant: 2000, rpm: 20 },
   },
   cream: {
     tolerance: { kind: 'percent', below: 25, above: 25 },
-    method: 'T-bar C, 10 rpm, 30 s, descending, unstirred, at 25 °C',
+    method: 'unstirred',
+    conditions: { seconds: 30, path: 'descending', sampleTemperatureC: 25 },
     viscosity: { spindle: 'T-bar C', spindleConstant: 10_000, rpm: 10 },
   },
   'stiff cream': {
     tolerance: { kind: 'percent', below: 25, above: 25 },
-    method: 'T-bar D, 5 rpm, 30 s, descending, unstirred, at 25 °C',
+    method: 'unstirred',
+    conditions: { seconds: 30, path: 'descending', sampleTemperatureC: 25 },
     viscosity: { spindle: 'T-bar D', spindleConstant: 20_000, rpm: 5 },
   },
 }

@@ -1,5 +1,5 @@
 import * as z from '@/lib/http/zod'
-import { paths } from '../rules/conditions'
+import { conditionFields } from './conditions'
 import { attributeKey } from './attributes'
 import { photoLines } from './photo-lines'
 
@@ -28,11 +28,8 @@ export const entryDetail = z.strictObject({
   photoLines: photoLines.optional(),
   grossG: measured.optional(),
   word: z.string().max(60).optional(),
+  ...conditionFields,
   sampleTemperatureC: measured.optional(),
-  /** Of a viscosity: when it was read after the start, how the spindle moved, how long the jar had stood. */
-  seconds: z.number().positive('Seconds are above 0.').max(86_400).optional(),
-  path: z.enum(paths).optional(),
-  restMinutes: z.number().min(0).max(100_000).optional(),
   typeMethod: z.enum(['dilution', 'conductivity', 'dye']).optional(),
   /** Taken from a photo or judged by eye: shown as an estimate wherever it stands. */
   isEstimate: z.literal(true).optional(),

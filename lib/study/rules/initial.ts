@@ -1,6 +1,7 @@
 import { refuse } from '@/lib/http/errors'
 import type { PlannedAttribute } from '@/lib/protocol/schema'
 import { attributeOf, attributeName, toldFromInitial, readByText } from '@/lib/reading/schema/attributes'
+import { methodText } from '@/lib/reading/rules/conditions'
 import { computed, ImpossibleEntry } from '@/lib/reading/rules/impossible-entry'
 import { valueOf as readingValue } from '@/lib/reading/rules/value'
 import { readTyped } from '@/lib/reading/schema/typed'
@@ -111,7 +112,7 @@ function rowOf(
     value,
     word: attribute.words?.[value] ?? null,
     typed: text,
-    detail: { method: planned.method, ...detail },
+    detail: { method: methodText(planned), ...planned.conditions, ...detail },
     instrumentId: reading.instrumentId,
     measuredAt: reading.measuredAt,
   }
@@ -141,7 +142,7 @@ function ofItself(
         instrumentId,
         measuredAt,
       },
-      ...{ value: read.value, word: read.word, detail: { method: planned.method, ...read.detail } },
+      ...{ value: read.value, word: read.word, detail: { method: methodText(planned), ...read.detail } },
     }
   } catch (error) {
     if (!(error instanceof ImpossibleEntry)) throw error
