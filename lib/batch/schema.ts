@@ -1,4 +1,5 @@
 import { emulsionTypes } from '@/lib/formula/schema'
+import { instant } from '@/lib/http/time'
 import * as z from '@/lib/http/zod'
 import { deviceTimes } from '@/lib/reading/schema/entry'
 
@@ -41,7 +42,7 @@ const claim = {
     .datetime({ offset: true, error: 'Give the time as a date and an hour.' })
     .nullable()
     .default(null),
-  deviceNow: z.iso.datetime({ offset: true }).nullable().default(null),
+  deviceNow: instant.nullable().default(null),
   isFromPaper: z.boolean().default(false),
 }
 export type Claimed = { claimedAt: string | null; deviceNow: string | null; isFromPaper: boolean }

@@ -1,4 +1,5 @@
+import { calendarDay } from '@/lib/http/time'
 import * as z from '@/lib/http/zod'
 
-export const benchDay = z.object({ today: z.iso.date().optional() })
+export const benchDay = z.object({ today: calendarDay().optional() })
 export const benchJarAddress = z.object({ code: z.string().trim().min(1).max(60) })

@@ -1,3 +1,4 @@
+import { calendarDay, instant } from '@/lib/http/time'
 import * as z from '@/lib/http/zod'
 
 const mPas = (what: string) => z.number(`Type ${what} in mPa·s.`).positive('A viscosity is above nothing.')
@@ -66,8 +67,8 @@ export const newCalibration = z.object({
   id: z.uuid(),
   instrumentId: z.uuid(),
   /** When it was done; now if left out, never later than now. */
-  calibratedAt: z.iso.datetime({ offset: true }).optional(),
-  dueOn: z.iso.date('Say until when it holds.'),
+  calibratedAt: instant.optional(),
+  dueOn: calendarDay('Say until when it holds.'),
   check: z.discriminatedUnion('kind', [meterCheck, viscometerCheck, balanceCheck]),
   note: z.string().trim().max(1000).default(''),
   /** The person knows which readings a doubtful result reaches back to. */

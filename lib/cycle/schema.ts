@@ -1,6 +1,6 @@
+import { instant } from '@/lib/http/time'
 import * as z from '@/lib/http/zod'
 
-const instant = z.iso.datetime({ offset: true })
 const half = z.enum(['cold', 'warm'], 'Choose the cold or the warm half.')
 const reached = z
   .number('Give the temperature as a number.')

@@ -1,6 +1,7 @@
+import { calendarDay } from '@/lib/http/time'
 import * as z from '@/lib/http/zod'
 
-export const dayAddress = z.object({ day: z.iso.date() })
+export const dayAddress = z.object({ day: calendarDay() })
 
 /** What was seen, by id: an entry that came meanwhile is not reviewed unseen. */
 export const dayReview = z.object({

@@ -40,6 +40,7 @@ export function fromDatabaseError(error: unknown): AppError | null {
     case '22003':
     case '22007':
     case '22008':
+    case '22009':
     case '22021':
     case '22P05':
       return new AppError(

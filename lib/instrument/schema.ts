@@ -1,3 +1,4 @@
+import { instant } from '@/lib/http/time'
 import * as z from '@/lib/http/zod'
 
 const above = (what: string) => z.number(`Type ${what}.`).positive('This is above nothing.')
@@ -69,8 +70,8 @@ export type ChangedInstrument = z.input<typeof changedInstrument>
 /** What the instrument showed of its daily check. */
 export const dailyChecked = z.object({
   id: z.uuid(),
-  claimedAt: z.iso.datetime({ offset: true }).optional(),
-  deviceNow: z.iso.datetime({ offset: true }).optional(),
+  claimedAt: instant.optional(),
+  deviceNow: instant.optional(),
   read: z.number('Type what the instrument shows.'),
   /** Of buffer or fluid, where it is taken. */
   temperatureC: z.number('Type the temperature.').min(0).max(100).nullable().default(null),

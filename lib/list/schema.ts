@@ -1,3 +1,4 @@
+import { calendarDay } from '@/lib/http/time'
 import * as z from '@/lib/http/zod'
 
 /** How a column's values are compared and written: as text, number, day, or instant. */
@@ -124,7 +125,7 @@ function placeOf(given: Given): Place | null {
 }
 
 function isDay(typed: string): boolean {
-  return z.iso.date().safeParse(typed).success
+  return calendarDay().safeParse(typed).success
 }
 
 function one(given: unknown): unknown {

@@ -1,3 +1,4 @@
+import { calendarDay } from '@/lib/http/time'
 import * as z from '@/lib/http/zod'
 
 const lotFields = {
@@ -17,8 +18,8 @@ const lotFields = {
     .refine((lines) => new Set(lines.map((line) => line.temperatureC)).size === lines.length, {
       message: 'A temperature stands twice.',
     }),
-  expiresOn: z.iso.date('Give the day on which it expires.'),
-  openedOn: z.iso.date().nullable().default(null),
+  expiresOn: calendarDay('Give the day on which it expires.'),
+  openedOn: calendarDay().nullable().default(null),
   /** Once opened; null where only the expiry counts. */
   keepsDays: z.number().int().positive('It keeps for some days.').max(3650).nullable().default(null),
 }

@@ -1,3 +1,4 @@
+import { calendarDay } from '@/lib/http/time'
 import * as z from '@/lib/http/zod'
 import { outsideTests } from '@/lib/protocol/schema'
 
@@ -26,7 +27,7 @@ export const outsideFields = z
     value: text(200).default(''),
     labName: text(160).min(1, 'Name the laboratory.'),
     reportNumber: text(80).min(1, 'Give the number of the report.'),
-    reportedOn: z.iso.date('Give the day of the report.'),
+    reportedOn: calendarDay('Give the day of the report.'),
     note: text(500).default(''),
     supersedesId: z.string().default('').transform(blank).pipe(z.uuid().optional()),
     reason: text(500).default(''),

@@ -1,3 +1,4 @@
+import { calendarDay } from '@/lib/http/time'
 import * as z from '@/lib/http/zod'
 
 export const pullJarAddress = z.object({ id: z.uuid() })
@@ -26,7 +27,7 @@ export type AssignedRepeat = {
   attribute: string
 }
 
-const day = z.iso.date()
+const day = calendarDay()
 
 /** Pulls that leave a closed day, each with the day on which it stood when this was chosen. */
 export const movedPulls = z.object({

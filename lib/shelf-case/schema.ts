@@ -1,3 +1,4 @@
+import { calendarDay } from '@/lib/http/time'
 import * as z from '@/lib/http/zod'
 
 export const caseKinds = ['real time', 'provisional'] as const
@@ -22,7 +23,7 @@ export const caseProposal = z.object({
   ),
   whyFewer: text(600).default(''),
   provisionalRule: text(1000).default(''),
-  reviewOn: z.iso.date('Give the day as year-month-day.').nullable().default(null),
+  reviewOn: calendarDay('Give the day as year-month-day.').nullable().default(null),
   periodAfterOpeningMonths: months.nullable().default(null),
   periodAfterOpeningEvidence: text(600).default(''),
 })

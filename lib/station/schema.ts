@@ -1,3 +1,4 @@
+import { calendarDay, instant } from '@/lib/http/time'
 import * as z from '@/lib/http/zod'
 import { zeroCelsius } from '@/lib/science/kelvin'
 
@@ -70,12 +71,12 @@ export type ChangedStation = z.input<typeof changedStation>
 
 export const loggedTemperatures = z.object({
   /** Where a device says when: its clock may be off. */
-  deviceNow: z.iso.datetime({ offset: true }).optional(),
+  deviceNow: instant.optional(),
   readings: z
     .array(
       z.object({
         id: z.uuid(),
-        measuredAt: z.iso.datetime({ offset: true }),
+        measuredAt: instant,
         temperatureC: z
           .number('Give the temperature as a number.')
           .gt(-zeroCelsius, 'That is below absolute zero.')
@@ -148,8 +149,8 @@ export type MovedJars = z.input<typeof movedJars>
 export const plannedDowntime = z
   .object({
     id: z.uuid(),
-    fromOn: z.iso.date('Give the first day.'),
-    toOn: z.iso.date('Give the last day.'),
+    fromOn: calendarDay('Give the first day.'),
+    toOn: calendarDay('Give the last day.'),
     reason: reasonFor('the station is out of use'),
   })
   .refine(({ fromOn, toOn }) => fromOn <= toOn, {
@@ -163,6 +164,6 @@ export const cancelledDowntime = z.object({ id: z.uuid(), reason: reasonFor('it 
 export const stationAddress = z.object({ id: z.uuid() })
 export const downtimeAddress = stationAddress.extend({ downtimeId: z.uuid() })
 export const stationRecordPeriod = z.object({
-  from: z.iso.datetime({ offset: true }).optional(),
-  to: z.iso.datetime({ offset: true }).optional(),
+  from: instant.optional(),
+  to: instant.optional(),
 })

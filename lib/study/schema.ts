@@ -1,3 +1,4 @@
+import { instant } from '@/lib/http/time'
 import * as z from '@/lib/http/zod'
 import { tolerance } from '@/lib/protocol/schema'
 import { attributeKey } from '@/lib/reading/schema/attributes'
@@ -32,7 +33,7 @@ export const initialReading = z.object({
   detail: entryDetail.omit({ torquePercent: true }).default({}),
   instrumentId: z.uuid().nullable().default(null),
   /** Now if left out; never later than now. */
-  measuredAt: z.iso.datetime({ offset: true }).optional(),
+  measuredAt: instant.optional(),
 })
 export type InitialReading = z.output<typeof initialReading>
 
@@ -54,7 +55,7 @@ export const startedStudy = z.object({
   adjustments: studyAdjustments,
   /** Why some of the protocol's stations do not start. */
   whyInPart: z.string().trim().max(500).default(''),
-  startedAt: z.iso.datetime({ offset: true }).optional(),
+  startedAt: instant.optional(),
   initialReadings: z.array(initialReading).max(200),
   clientId: z.uuid().nullable().default(null),
   isShared: z.boolean().default(false),

@@ -1,3 +1,4 @@
+import { instant } from '@/lib/http/time'
 import * as z from '@/lib/http/zod'
 import { conditionFields } from './conditions'
 import { attributeKey } from './attributes'
@@ -68,8 +69,8 @@ export const resolution = z.object({
 
 /** Times as the device says them; the server corrects them by the device's own error. */
 export const deviceTimes = z.object({
-  deviceNow: z.iso.datetime({ offset: true }),
-  claimedAt: z.iso.datetime({ offset: true }),
+  deviceNow: instant,
+  claimedAt: instant,
 })
 
 export const readingsOfJar = deviceTimes.extend({
