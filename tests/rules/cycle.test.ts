@@ -56,6 +56,13 @@ describe('where a freeze-thaw station stands', () => {
     expect(at(66)).toMatchObject({ isOverdue: true })
   })
 
+  it('a half whose end is told late was not held by what was pressed after that end', () => {
+    const presses = [press('begin', friday), press('hold', after(2)), press('go on', after(4))]
+    const at = (hours: number) => cycleState(record({ presses }), after(hours)) as Running
+    expect(at(1)).toMatchObject({ hours: 1, heldHours: 0, hold: null })
+    expect(at(3)).toMatchObject({ hours: 3, heldHours: 1 })
+  })
+
   it('a hold that is over before the half is due changes nothing but the record', () => {
     const presses = [press('begin', friday), press('hold', after(2)), press('go on', after(4))]
     expect(cycleState(record({ presses }), after(10))).toMatchObject({ dueAt: after(16), heldHours: 2 })

@@ -58,7 +58,8 @@ export function cycleState(record: CycleRecord, now: string): CycleState {
 
 function running({ asked, presses }: CycleRecord, begun: CyclePress, now: number): Running {
   const from = Date.parse(begun.at)
-  const holds = holdsOf(presses.filter((press) => isSame(press, begun)))
+  // An end that is told late lies before what was pressed since.
+  const holds = holdsOf(presses.filter((press) => isSame(press, begun) && Date.parse(press.at) <= now))
   const open = holds.find((hold) => hold.to === null) ?? null
   const prescribed = askedHours(begun.half, asked)
   const dueAt = prescribed === null ? null : putOff(from + prescribed * hour, holds, now)
