@@ -2,7 +2,7 @@
 
 import { useEffect, useState } from 'react'
 import { newId } from '@/lib/db/id'
-import { fetcher, send } from '@/lib/http/fetcher'
+import { ClientError, fetcher, send } from '@/lib/http/fetcher'
 import { photoKeys } from '@/lib/photo/keys'
 import type { PhotoProposal } from '@/lib/science/photo-layers/propose'
 import { measuringCopy, sizedCopy, type MeasuringCopy } from './measuring-copy'
@@ -21,7 +21,7 @@ export type Proposing =
 
 /** The copy to measure on, and what the server makes of it once it has it. By hand it works without the server too. */
 export function useMeasuring(photo: PhotoToMeasure) {
-  const [copy, setCopy] = useState<(MeasuringCopy & { url: string; isKept: boolean }) | null>(null)
+  const [copy, setCopy] = useState<(MeasuringCopy & { url: string }) | null>(null)
   const [proposing, setProposing] = useState<Proposing>({ state: 'waiting' })
   const [isUnreadable, setUnreadable] = useState(false)
   const { id, file, isSent } = photo
@@ -36,7 +36,7 @@ export function useMeasuring(photo: PhotoToMeasure) {
         : await measuringCopy(file ?? (await reached(photoKeys.original(id))) ?? new Blob())
       if (isOver) return
       url = URL.createObjectURL(made.blob)
-      setCopy({ ...made, url, isKept: kept !== null })
+      setCopy({ ...made, url })
     }
     begin().catch(() => (isOver ? undefined : setUnreadable(true)))
     return () => {
@@ -48,7 +48,7 @@ export function useMeasuring(photo: PhotoToMeasure) {
   useEffect(() => {
     if (!copy || !isSent) return
     let isOver = false
-    void proposed(id, copy.isKept ? null : copy.blob).then((proposal) => {
+    void proposed(id, copy.blob).then((proposal) => {
       if (!isOver) setProposing(proposal ? { state: 'there', proposal } : { state: 'none' })
     })
     return () => {
@@ -65,15 +65,21 @@ async function reached(url: string): Promise<Blob | null> {
 }
 
 /** Null where the server is not reached or cannot read it: the lines are then set by hand. */
-async function proposed(id: string, copy: Blob | null): Promise<PhotoProposal | null> {
+async function proposed(id: string, copy: Blob): Promise<PhotoProposal | null> {
   try {
-    if (copy) {
-      const form = new FormData()
-      form.append('file', copy, 'copy.jpg')
-      await send(photoKeys.copy(id), 'POST', form, { key: newId() })
-    }
-    return await fetcher<PhotoProposal>(photoKeys.proposal(id))
+    return await fetcher<PhotoProposal>(photoKeys.proposal(id)).catch(async (thrown: unknown) => {
+      if (!(thrown instanceof ClientError) || thrown.status !== 404) throw thrown
+      await sendCopy(id, copy)
+      return fetcher<PhotoProposal>(photoKeys.proposal(id))
+    })
   } catch {
     return null
   }
+}
+
+/** Of a photo that went out without one: it came before copies did, or was sent while no page was open. */
+async function sendCopy(id: string, copy: Blob): Promise<void> {
+  const form = new FormData()
+  form.append('file', copy, 'copy.jpg')
+  await send(photoKeys.copy(id), 'POST', form, { key: newId() })
 }

@@ -557,6 +557,7 @@ export interface Photo {
   pullJarId: string | null
   recordedAt: Generated<string>
   sha256: string
+  shows: Generated<string>
   studyId: string
   takenAt: string
   takenBy: string

@@ -9,7 +9,7 @@ import { claimKey, hashBody, keepAnswer } from './idempotency'
 import { parseBody, parseParams, parseQuery, parseWith, readBody } from './parse'
 import { keepRefusal } from './refusal'
 import { answerError, answerJson, newReply, type Reply } from './respond'
-import { discard, receive, type Received } from './upload'
+import { discard, receive, type Accepted, type Received } from './upload'
 
 type Context = { params: Promise<unknown> }
 
@@ -40,7 +40,16 @@ type WriteArgs<P, I> = {
   request: Request
   reply: Reply
 }
-type UploadArgs<P, F> = { db: Trx; actor: Actor; params: P; file: Received; fields: F; now: string }
+type UploadArgs<P, F> = {
+  db: Trx
+  actor: Actor
+  params: P
+  file: Received
+  /** Null where none came along. */
+  beside: Received | null
+  fields: F
+  now: string
+}
 export type Download = {
   body: Uint8Array | ReadableStream<Uint8Array>
   type: string
@@ -88,26 +97,27 @@ export function write<P = Nothing, I = Nothing, R = unknown>(
 
 /** The file is whole, checked and hashed on disk before the transaction opens; the handler moves it away. */
 export function upload<P = Nothing, F = Nothing, R = unknown>(
-  spec: Common<P> & {
-    maxBytes: number
-    /** By content, whatever the name or the browser says. */
-    types: readonly string[]
-    fields?: z.ZodType<F>
-    handler: (args: UploadArgs<P, F>) => Promise<R> | R
-  },
+  spec: Common<P> &
+    Accepted & {
+      /** A second file that may come along, in a field of its own; a repeat need not bring the same one. */
+      beside?: Accepted & { field: string }
+      fields?: z.ZodType<F>
+      handler: (args: UploadArgs<P, F>) => Promise<R> | R
+    },
 ): Route {
   return declare('upload', spec.permission, async (request, context, actor, reply) => {
     const key = readKey(request)
     const params = await parseParams(spec.params, context?.params)
-    const { file, texts } = await receive(request, spec.maxBytes, spec.types)
+    const { file, beside, texts } = await receive(request, spec, spec.beside)
     try {
       const fields = parseWith(spec.fields, texts)
       const bodyHash = hashBody(file.sha256 + JSON.stringify(texts))
       return await once(request, actor, reply, key, bodyHash, undefined, (trx, now) =>
-        spec.handler({ db: trx, actor, params, file, fields, now }),
+        spec.handler({ db: trx, actor, params, file, beside, fields, now }),
       )
     } finally {
       await discard(file.path)
+      if (beside) await discard(beside.path)
     }
   })
 }

@@ -3,17 +3,22 @@ import path from 'node:path'
 import { Readable } from 'node:stream'
 import type { IncomingMessage } from 'node:http'
 import { fileTypeFromBuffer } from 'file-type'
-import formidable, { errors as formErrors } from 'formidable'
+import formidable, { errors as formErrors, type File } from 'formidable'
 import { env } from '@/lib/env'
 import { AppError, refuse } from './errors'
 
 export type Received = { path: string; sha256: string; bytes: number; type: string; originalName: string }
 
+/** Types are told by content, whatever the name or the browser says. */
+export type Accepted = { maxBytes: number; types: readonly string[] }
+type Sent = { file: Received; beside: Received | null; texts: Record<string, string> }
+
+/** A form's field `file`, and where it is taken the file in another field that goes along with it. */
 export async function receive(
   request: Request,
-  maxBytes: number,
-  types: readonly string[],
-): Promise<{ file: Received; texts: Record<string, string> }> {
+  { maxBytes, types }: Accepted,
+  beside?: Accepted & { field: string },
+): Promise<Sent> {
   if (!/^multipart\/form-data\b/i.test(request.headers.get('content-type') ?? '') || !request.body)
     throw refuse.unsupported('This address takes a file. Send it as a form with one field named file.')
   const folder = path.resolve(env().filesFolder, 'incoming')
@@ -21,11 +26,11 @@ export async function receive(
   const form = formidable({
     uploadDir: folder,
     hashAlgorithm: 'sha256',
-    maxFiles: 1,
+    maxFiles: beside ? 2 : 1,
     maxFields: 30,
     maxFieldsSize: 100_000,
     maxFileSize: maxBytes,
-    maxTotalFileSize: maxBytes,
+    maxTotalFileSize: maxBytes + (beside?.maxBytes ?? 0),
     allowEmptyFiles: false,
   })
   // Names are the server's own; the caller's name is kept as text only.
@@ -41,23 +46,39 @@ export async function receive(
     const file = files['file']?.[0]
     if (!file)
       throw refuse.invalid('No file arrived. Choose one and send it again.', { file: 'Choose a file.' })
-    const type = await typeOf(file.filepath)
-    if (!type || !types.includes(type))
-      throw refuse.unsupported(`This file is not one of ${types.join(', ')} by its content. Choose another.`)
     const texts: Record<string, string> = {}
     for (const [name, values] of Object.entries(fields)) texts[name] = values?.at(-1) ?? ''
-    const originalName = path
-      .basename(file.originalFilename ?? '')
-      .replace(/[\u0000-\u001f]/g, '')
-      .slice(0, 200)
+    const other = beside && files[beside.field]?.[0]
+    if (other && other.size > beside.maxBytes)
+      throw refuse.tooLarge(`The file beside it is larger than ${Math.floor(beside.maxBytes / 1e6)} MB.`)
     return {
-      file: { path: file.filepath, sha256: String(file.hash), bytes: file.size, type, originalName },
+      file: await received(file, types),
+      beside: other ? await received(other, beside.types) : null,
       texts,
     }
   } catch (thrown) {
     await Promise.all(stored.map(discard))
     throw toRefusal(thrown, maxBytes)
   }
+}
+
+async function received(
+  { filepath, originalFilename, hash, size }: File,
+  types: readonly string[],
+): Promise<Received> {
+  const name = originalFilename ?? ''
+  if (name.includes('/'))
+    throw refuse.invalid(
+      `"${name.slice(0, 60)}" is a path and not a file's name. Name the file plainly and send it again.`,
+      {
+        file: 'A plain name, without a path.',
+      },
+    )
+  const type = await typeOf(filepath)
+  if (!type || !types.includes(type))
+    throw refuse.unsupported(`This file is not one of ${types.join(', ')} by its content. Choose another.`)
+  const originalName = name.replace(/[\u0000-\u001f]/g, '').slice(0, 200)
+  return { path: filepath, sha256: String(hash), bytes: size, type, originalName }
 }
 
 export async function discard(filePath: string): Promise<void> {

@@ -1,10 +1,18 @@
 import * as z from '@/lib/http/zod'
 import { deviceTimes } from '@/lib/reading/schema/entry'
 
+/** What is on it: the jar as it stands, its fill beside a grey card, or drops under the microscope. */
+export const photoShows = ['jar', 'colour', 'droplets'] as const
+export type PhotoShows = (typeof photoShows)[number]
+
 export const photoAddress = z.object({ id: z.uuid() })
 
 /** Fields of the form that carries the picture; the file is named `photo`. */
-export const photoFields = deviceTimes.extend({ id: z.uuid(), pullJarId: z.uuid() })
+export const photoFields = deviceTimes.extend({
+  id: z.uuid(),
+  pullJarId: z.uuid(),
+  shows: z.enum(photoShows).default('jar'),
+})
 export type PhotoFields = z.output<typeof photoFields>
 
 export const photoFilter = z.object({

@@ -198,6 +198,30 @@ describe('the copy that is measured on', () => {
     expect(Buffer.from(await back.response.arrayBuffer()).equals(Buffer.from(bytes))).toBe(true)
   })
 
+  it('comes along with its photo; one that is none leaves the photo as it is, and sent again it is the first that stays', async () => {
+    const { bytes, height } = drawnPhoto(5010, 800)
+    const sendBoth = (id: string, beside: Uint8Array, photo = bytes) => {
+      const data = form(photo, id)
+      data.set('copy', new Blob([beside as BlobPart], { type: 'image/jpeg' }), 'copy.jpg')
+      return call(add, { cookie: technician.cookie, body: data })
+    }
+    const copyOf = (id: string) =>
+      t.db.selectFrom('photoCopy').select(['height', 'madeBy']).where('photoId', '=', id).execute()
+    const id = newId()
+    expect((await sendBoth(id, bytes)).status).toBe(200)
+    expect(await copyOf(id)).toEqual([{ height, madeBy: technician.actor.personId }])
+    expect((await call(proposal, { cookie: technician.cookie, params: { id } })).status).toBe(200)
+    expect((await sendBoth(id, await picture(600, 800))).status).toBe(200)
+    expect(await copyOf(id)).toHaveLength(1)
+
+    const without = newId()
+    expect((await sendBoth(without, await picture(900, 900), await picture(600, 800))).status).toBe(200)
+    expect(await copyOf(without)).toEqual([])
+    const text = new TextEncoder().encode('no picture')
+    expect((await sendBoth(newId(), text)).status).toBe(415)
+    expect(await readdir(path.join(folder, 'files', 'incoming'))).toEqual([])
+  })
+
   it('is refused where it is too large, of another shape, or says where it was taken', async () => {
     const id = newId()
     await send(await picture(2400, 1200), id)
@@ -306,14 +330,26 @@ describe('A08: what is no photo is refused and leaves nothing', () => {
     expect(await readdir(path.join(folder, 'files', 'incoming'))).toEqual([])
   })
 
-  it('a name that climbs is text only', async () => {
+  it.each(['../x', '../../etc/passwd', '/etc/passwd', 'week 4/jar.jpg'])(
+    'the name %s, which is a path, is refused and leaves nothing',
+    async (name) => {
+      const before = await count()
+      const answer = await send(await picture(8, 8), newId(), name)
+      expect(answer.status).toBe(422)
+      expect(answer.body.error.sentence).toMatch(/is a path and not a file's name/)
+      expect(await count()).toBe(before)
+      expect(await readdir(path.join(folder, 'files', 'incoming'))).toEqual([])
+    },
+  )
+
+  it('a name with dots and letters of any script is kept as it is', async () => {
     const id = newId()
-    expect((await send(await picture(8, 8), id, '../../etc/passwd')).status).toBe(200)
+    expect((await send(await picture(8, 8), id, 'jar..week 4, 45 °C.jpg')).status).toBe(200)
     const { originalName } = await t.db
       .selectFrom('photo')
       .select('originalName')
       .where('id', '=', id)
       .executeTakeFirstOrThrow()
-    expect(originalName).not.toContain('/')
+    expect(originalName).toBe('jar..week 4, 45 °C.jpg')
   })
 })

@@ -1,7 +1,7 @@
 import { read, upload } from '@/lib/http/route'
 import { addPhoto, photoTypes } from '@/lib/photo/commands/add-photo'
 import { listPhotos } from '@/lib/photo/queries/list'
-import { maxPhotoBytes, photoFields, photoFilter } from '@/lib/photo/schema'
+import { maxCopyBytes, maxPhotoBytes, photoFields, photoFilter } from '@/lib/photo/schema'
 
 export const GET = read({
   permission: 'study.read',
@@ -14,5 +14,6 @@ export const POST = upload({
   maxBytes: maxPhotoBytes,
   types: photoTypes,
   fields: photoFields,
-  handler: ({ db, actor, file, fields, now }) => addPhoto(db, actor, file, fields, now),
+  beside: { field: 'copy', maxBytes: maxCopyBytes, types: ['image/jpeg'] },
+  handler: ({ db, actor, file, beside, fields, now }) => addPhoto(db, actor, file, beside, fields, now),
 })

@@ -43,7 +43,14 @@ export async function fillPhotos(filling: Filling, studyId: string): Promise<voi
             type: 'image/jpeg',
             originalName: 'jar.jpg',
           },
-          { id: newId(), pullJarId: row.id, deviceNow: at.toISOString(), claimedAt: at.toISOString() },
+          null,
+          {
+            id: newId(),
+            shows: 'jar',
+            pullJarId: row.id,
+            deviceNow: at.toISOString(),
+            claimedAt: at.toISOString(),
+          },
           now,
         ),
       )

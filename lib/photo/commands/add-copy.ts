@@ -21,6 +21,11 @@ export async function addCopy(trx: Trx, actor: Actor, id: string, file: Received
     .where('photoId', '=', id)
     .executeTakeFirst()
   if (known) return known
+  return keepCopy(trx, actor, { ...photo, id }, file)
+}
+
+/** Checked against its photo, stored under its hash, and a row of it. */
+export async function keepCopy(trx: Trx, actor: Actor, photo: Size & { id: string }, file: Received) {
   const bytes = await readFile(file.path)
   const size = wrongWith(bytes) === null ? imageSize(bytes) : null
   if (!size || withoutPlace(bytes) !== bytes)
@@ -34,7 +39,7 @@ export async function addCopy(trx: Trx, actor: Actor, id: string, file: Received
   await storage().put(copyKey(file.sha256), bytes, 'image/jpeg')
   await trx
     .insertInto('photoCopy')
-    .values({ photoId: id, sha256: file.sha256, bytes: file.bytes, ...size, madeBy: actor.personId })
+    .values({ photoId: photo.id, sha256: file.sha256, bytes: file.bytes, ...size, madeBy: actor.personId })
     .execute()
   return size
 }

@@ -2,7 +2,7 @@ import { readFile } from 'node:fs/promises'
 import type { Actor } from '@/lib/auth/actor'
 import type { Trx } from '@/lib/db/client'
 import { storage } from '@/lib/files/storage'
-import { refuse } from '@/lib/http/errors'
+import { AppError, refuse } from '@/lib/http/errors'
 import type { Received } from '@/lib/http/upload'
 import { enqueue } from '@/lib/jobs/enqueue'
 import { claimedInstant } from '@/lib/reading/rules/claimed-time'
@@ -11,13 +11,24 @@ import { originalKey } from '../rules/keys'
 import { imageSize } from '../rules/size'
 import { wrongWith } from '../rules/whole'
 import { maxPhotoPixels, type PhotoFields } from '../schema'
+import { keepCopy } from './add-copy'
 
 const heic = ['image/heic', 'image/heif', 'image/heic-sequence', 'image/heif-sequence']
 /** What the upload lets through to here, the last of them only to be refused with a way out. */
 export const photoTypes = ['image/jpeg', 'image/png', ...heic]
 
-/** The file is stored whole under its hash before the row names it. Sending it twice keeps one. */
-export async function addPhoto(trx: Trx, actor: Actor, file: Received, fields: PhotoFields, now: string) {
+/**
+ * The file is stored whole under its hash before the row names it, the measuring copy that came along likewise. Sending it
+ * twice keeps one.
+ */
+export async function addPhoto(
+  trx: Trx,
+  actor: Actor,
+  file: Received,
+  copy: Received | null,
+  fields: PhotoFields,
+  now: string,
+) {
   const jar = await findJar(trx, fields.pullJarId)
   const known = await trx
     .selectFrom('photo')
@@ -37,12 +48,28 @@ export async function addPhoto(trx: Trx, actor: Actor, file: Received, fields: P
       studyId: jar.studyId,
       jarId: jar.jarId,
       pullJarId: fields.pullJarId,
+      shows: fields.shows,
       ...picture,
       takenBy: actor.personId,
       takenAt: claimedInstant(fields, now).measuredAt,
     })
     .execute()
+  if (copy) await keepCopyIfSound(trx, actor, { ...picture, id: fields.id }, copy)
   return { id: fields.id }
+}
+
+/** The photo is what must not be lost: with a copy that is none it goes without, and measuring makes another. */
+async function keepCopyIfSound(
+  trx: Trx,
+  actor: Actor,
+  photo: Parameters<typeof keepCopy>[2],
+  copy: Received,
+) {
+  try {
+    await keepCopy(trx, actor, photo, copy)
+  } catch (thrown) {
+    if (!(thrown instanceof AppError)) throw thrown
+  }
 }
 
 /** A picture checked and stored whole, and what of it a row keeps. Its small picture is made ahead by a job. */

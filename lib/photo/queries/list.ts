@@ -17,6 +17,7 @@ export async function listPhotos(db: Db, actor: Actor, studyCode: string, jarCod
       'photo.height',
       'photo.takenAt',
       'photo.pullJarId',
+      'photo.shows',
       'copy.width as copyWidth',
       'copy.height as copyHeight',
       'jar.id as jarId',
