@@ -1,5 +1,5 @@
 import { emulsionTypes } from '@/lib/formula/schema'
-import { instant } from '@/lib/http/time'
+import { instant } from '@/lib/time/schema'
 import * as z from '@/lib/http/zod'
 import { deviceTimes } from '@/lib/reading/schema/entry'
 

@@ -1,4 +1,4 @@
-import { calendarDay, instant } from '@/lib/http/time'
+import { calendarDay, instant } from '@/lib/time/schema'
 import * as z from '@/lib/http/zod'
 
 const mPas = (what: string) => z.number(`Type ${what} in mPa·s.`).positive('A viscosity is above nothing.')

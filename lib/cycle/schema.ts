@@ -1,4 +1,4 @@
-import { instant } from '@/lib/http/time'
+import { instant } from '@/lib/time/schema'
 import * as z from '@/lib/http/zod'
 
 const half = z.enum(['cold', 'warm'], 'Choose the cold or the warm half.')

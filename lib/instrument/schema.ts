@@ -1,4 +1,4 @@
-import { instant } from '@/lib/http/time'
+import { instant } from '@/lib/time/schema'
 import * as z from '@/lib/http/zod'
 
 const above = (what: string) => z.number(`Type ${what}.`).positive('This is above nothing.')

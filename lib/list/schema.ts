@@ -1,4 +1,4 @@
-import { calendarDay } from '@/lib/http/time'
+import { calendarDay } from '@/lib/time/schema'
 import * as z from '@/lib/http/zod'
 
 /** How a column's values are compared and written: as text, number, day, or instant. */

@@ -1,4 +1,4 @@
-import { calendarDay } from '@/lib/http/time'
+import { calendarDay } from '@/lib/time/schema'
 import * as z from '@/lib/http/zod'
 import { outsideTests } from '@/lib/protocol/schema'
 

@@ -1,4 +1,4 @@
-import { calendarDay } from '@/lib/http/time'
+import { calendarDay } from '@/lib/time/schema'
 import * as z from '@/lib/http/zod'
 
 export const pullJarAddress = z.object({ id: z.uuid() })

@@ -1,4 +1,4 @@
-import { calendarDay, instant } from '@/lib/http/time'
+import { calendarDay, instant } from '@/lib/time/schema'
 import * as z from '@/lib/http/zod'
 import { zeroCelsius } from '@/lib/science/kelvin'
 

@@ -1,4 +1,4 @@
-import { instant } from '@/lib/http/time'
+import { instant } from '@/lib/time/schema'
 import * as z from '@/lib/http/zod'
 import { tolerance } from '@/lib/protocol/schema'
 import { attributeKey } from '@/lib/reading/schema/attributes'

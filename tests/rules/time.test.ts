@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { calendarDay, instant } from '@/lib/http/time'
+import { calendarDay, instant } from '@/lib/time/schema'
 
 describe('moments and days that somebody tells', () => {
   it('a moment is kept in UTC, whatever its offset; an offset that PostgreSQL refuses is no fault', () => {
