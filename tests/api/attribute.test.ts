@@ -6,6 +6,8 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { GET as document } from '@/app/api/outside-results/[id]/document/route'
 import { POST as log } from '@/app/api/pulls/[id]/readings/route'
 import { POST as makeProtocol } from '@/app/api/protocols/route'
+import { POST as correct } from '@/app/api/readings/[id]/correct/route'
+import { POST as voidReading } from '@/app/api/readings/[id]/void/route'
 import { GET as getCurves } from '@/app/api/studies/[code]/curves/route'
 import { GET as listOutside, POST as addOutside } from '@/app/api/studies/[code]/outside-results/route'
 import { GET as exportReadings } from '@/app/api/studies/[code]/readings/export/route'
@@ -125,6 +127,88 @@ describe('attributes at the jar', () => {
       .limit(1)
       .executeTakeFirstOrThrow()
     expect(value).toBeCloseTo(2.0425, 4)
+  })
+
+  it('R02: a corrected initial tells every later difference of colour anew, and hides none of them', async () => {
+    const first = await t.db
+      .selectFrom('reading')
+      .select('id')
+      .where('studyId', '=', study.studyId)
+      .where('attribute', '=', 'colour')
+      .where('studyStationId', 'is', null)
+      .executeTakeFirstOrThrow()
+    const voided = await call(voidReading, {
+      cookie: formulator.cookie,
+      params: { id: first.id },
+      body: { id: newId(), reason: 'wrong jar' },
+    })
+    expect(voided.status).toBe(409)
+    expect(voided.body.error.sentence).toMatch(/^two later readings are told from this initial\. Correct it/i)
+    const answer = await call(correct, {
+      cookie: formulator.cookie,
+      params: { id: first.id },
+      body: { id: newId(), typed: '50 3.1571 -77.2803', reason: 'read from the line above' },
+    })
+    expect(answer.status).toBe(200)
+    const rows = await t.db
+      .selectFrom('reading as r')
+      .leftJoin('reading as newer', 'newer.supersedesId', 'r.id')
+      .select(['r.value', 'r.typed', 'r.reason', 'newer.value as now'])
+      .where('r.attribute', '=', 'colour')
+      .where('r.studyStationId', 'is not', null)
+      .where('r.typed', '=', '50,0 0 -82,7485')
+      .orderBy('r.recordedAt')
+      .execute()
+    // The same table, pairs 1 and 2: against the old initial and against the corrected one.
+    expect(rows.map((row) => [row.value?.toFixed(4), row.now?.toFixed(4)])).toEqual([
+      ['2.0425', '2.8615'],
+      ['2.8615', undefined],
+    ])
+    expect(rows[1]!.reason).toBe('Told anew, because the initial was corrected: read from the line above')
+    const series = await t.db
+      .selectFrom('series')
+      .select('latestValue')
+      .where('studyId', '=', study.studyId)
+      .where('attribute', '=', 'colour')
+      .where('latestValue', 'is not', null)
+      .executeTakeFirstOrThrow()
+    // The second is beyond the band and waits for its repeat; the first was no difference before the correction.
+    expect(series.latestValue).toBeGreaterThan(0.5)
+  })
+
+  it('under which a viscosity is read stands in the plan, the initial and the doubt', async () => {
+    const initial = await t.db
+      .selectFrom('reading')
+      .select(sql<object>`detail`.as('detail'))
+      .where('studyId', '=', study.studyId)
+      .where('attribute', '=', 'viscosity')
+      .where('studyStationId', 'is', null)
+      .executeTakeFirstOrThrow()
+    expect(initial.detail).toMatchObject({ seconds: 30, path: 'fixed', spindle: 'disc 4' })
+    const jar = jarAt(jars, 5, 3)
+    const body = measured(study, jar)
+    const [ph, viscosity] = body.readings
+    const answer = await call(log, {
+      cookie: technician.cookie,
+      params: { id: jar.pullJarId },
+      body: {
+        ...body,
+        leaveOut: ['type', 'colour', 'own.Foam-height', 'own.Grittiness'],
+        readings: [
+          { ...ph, detail: { phMethod: 'direct' } },
+          { ...viscosity, detail: { torquePercent: 65, seconds: 60, path: 'fixed' } },
+        ],
+      },
+    })
+    expect(answer.status).toBe(200)
+    const read = await t.db
+      .selectFrom('reading')
+      .select(['attribute', sql<{ reason: string; sentence: string }[]>`doubts`.as('doubts')])
+      .where('pullJarId', '=', jar.pullJarId)
+      .orderBy('attribute')
+      .execute()
+    expect(read.map((row) => row.doubts.map((doubt) => doubt.reason))).toEqual([[], ['conditions']])
+    expect(read[1]!.doubts[0]!.sentence).toMatch(/^Measured with 60 s instead of 30 s;/)
   })
 
   it('a turned emulsion is out at once, without a repeat', async () => {

@@ -28,6 +28,7 @@ function reading(more: Partial<FrameReading> & { weeks?: number }): FrameReading
     word: null,
     typed: '5.50',
     instrumentId: 'meter',
+    claimedAt: null,
     measuredAt,
     recordedAt: measuredAt,
     recordedBy: 'p',

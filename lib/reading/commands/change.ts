@@ -6,8 +6,10 @@ import { lockStudy, recomputeSeries } from '@/lib/series/commands'
 import { loadFrame } from '@/lib/series/queries/frame'
 import { seriesUnits } from '@/lib/series/rules/input'
 import { sentenceContext } from '@/lib/series/rules/spoken'
+import { refuseVoidOfStart, retellFromInitial } from './retell'
 import { findReading, type ReadingRow } from '../queries/one'
 import { valueDoubts, type EntryDoubt } from '../rules/entry-doubts'
+import { conditionKeys } from '../rules/conditions'
 import { refuseChange } from '../rules/may-change'
 import { ImpossibleEntry, type EntryValue } from '../rules/impossible-entry'
 import { valueOf } from '../rules/value'
@@ -29,12 +31,13 @@ export async function correctReading(trx: Trx, actor: Actor, readingId: string, 
       value: read.value,
       word: read.word,
       typed: input.typed,
-      detail: JSON.stringify(read.detail),
+      detail: JSON.stringify({ ...keptDetail(reading), ...read.detail }),
       instrumentId: input.instrumentId ?? reading.instrumentId,
       doubts: JSON.stringify(doubtsInstead(reading, read.detail)),
       reason: input.reason,
     })
     .execute()
+  await retellFromInitial(trx, actor, reading, input.reason)
   return { id: input.id, supersedesId: readingId, ...(await recompute(trx, actor, reading)) }
 }
 
@@ -43,6 +46,7 @@ export async function voidReading(trx: Trx, actor: Actor, readingId: string, inp
   const reading = await claimReading(trx, actor, readingId, input.id, null)
   if (reading.newerId === input.id) return { id: input.id, supersedesId: readingId, ...nothingNew }
   refuseChange(actor, reading)
+  await refuseVoidOfStart(trx, reading)
   await trx
     .insertInto('reading')
     .values({ ...placeOf(reading, actor), id: input.id, typed: '', isVoid: true, reason: input.reason })
@@ -132,6 +136,12 @@ async function askAboutValue(trx: Trx, reading: ReadingRow, read: EntryValue): P
       questions: [{ field: 'typed', attribute: reading.attribute, readingId: reading.id, sentence }],
     },
   })
+}
+
+/** How it was come by, where the correction says nothing else: one corrects what was read, not how. */
+function keptDetail({ attribute, detail }: ReadingRow): Record<string, unknown> {
+  const kept = ['method', 'clock', ...conditionKeys(attribute)]
+  return Object.fromEntries(kept.filter((key) => key in detail).map((key) => [key, detail[key]]))
 }
 
 /** Conditions stay as they were; the torque is what is typed now. */

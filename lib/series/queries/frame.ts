@@ -112,6 +112,7 @@ async function listFrameReadings(db: Db | Trx, studyId: string) {
       'r.typed',
       'r.instrumentId',
       'r.measuredAt',
+      'r.claimedAt',
       'r.recordedAt',
       'r.recordedBy',
       'pull.id as pullId',
