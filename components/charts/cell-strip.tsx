@@ -25,6 +25,8 @@ export type CellStripProps = {
   code: string
   /** `week 10, 17 Nov, read by MA`. */
   note: string
+  /** What happened to jars of this pull, a sentence each. */
+  happened?: string[]
   href?: string
   attributes: StripAttribute[]
   /** What stands in place of a value's text, such as the text with its details. */
@@ -32,7 +34,14 @@ export type CellStripProps = {
 }
 
 /** The jar that is picked on the sheet: each attribute as a level within its band. */
-export function CellStrip({ code, note, href, attributes, textAs = ({ text }) => text }: CellStripProps) {
+export function CellStrip({
+  code,
+  note,
+  happened = [],
+  href,
+  attributes,
+  textAs = ({ text }) => text,
+}: CellStripProps) {
   return (
     <div
       className="flex flex-wrap gap-x-4 gap-y-4 bg-recess py-4 shadow-[0_0_0_100vmax_var(--recess)] [clip-path:inset(0_-100vmax)]"
@@ -50,6 +59,11 @@ export function CellStrip({ code, note, href, attributes, textAs = ({ text }) =>
           )}
         </p>
         <p className="text-13 text-soft">{note}</p>
+        {happened.map((sentence) => (
+          <p key={sentence} className="mt-1 text-13">
+            {sentence}
+          </p>
+        ))}
       </div>
       <ul className="grid min-w-0 flex-1 basis-80 grid-cols-[repeat(auto-fit,minmax(150px,1fr))] gap-x-7 gap-y-4">
         {attributes.map((attribute) => (

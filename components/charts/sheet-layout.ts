@@ -3,7 +3,9 @@ import type { Standing } from '../marks/standing-shapes'
 import { timeScale } from './time-scale'
 import type { TimeScale } from './time-scale'
 
-export type SheetCellState = 'read' | 'due' | 'planned' | 'missed' | 'resting' | 'broken'
+export type SheetCellState = 'read' | 'due' | 'planned' | 'missed' | 'resting' | 'broken' | 'lost'
+
+export type SheetMishap = 'missed' | 'broken' | 'lost' | 'wrong jar' | 'pulled early'
 
 export type SheetCell = {
   weeks: number
@@ -12,6 +14,12 @@ export type SheetCell = {
   bottomPercent?: number | null
   separationPercent?: number | null
   detectionPercent?: number | null
+  /** Seen and too thin for the ruler. */
+  isTrace?: boolean
+  bleed?: number
+  creamPercent?: number
+  /** What happened to jars of this pull besides being read: `broken`. */
+  mishaps?: SheetMishap[]
   posture?: Posture
   href?: string | null
   /** What stands under the jar: `24.0`, `due`, `missed`. */
@@ -171,5 +179,6 @@ function neededPerWeek(rows: SheetRow[], glyph: number): number {
 }
 
 export function jarStateOf(cell: SheetCell): JarState {
+  if (cell.state === 'lost') return 'missed'
   return cell.state === 'read' ? 'drawn' : cell.state
 }

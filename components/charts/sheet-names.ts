@@ -22,7 +22,25 @@ export function cellName(row: SheetRow, cell: SheetCell, startOn: string, endWee
 }
 
 export function cellFinding(cell: SheetCell): string {
-  if (cell.state !== 'read') return cell.state
-  const percent = cell.separationPercent
-  return typeof percent === 'number' ? `separation ${percent.toFixed(1)} %` : cell.label || 'read'
+  const happened = happenedIn(cell)
+  if (cell.state !== 'read') return [cell.state, ...happened].join(', ')
+  return [layersFinding(cell), ...noted(cell), ...happened].join(', ')
+}
+
+/** What happened to jars of the pull, where the place itself does not say it. */
+export function happenedIn({ state, mishaps = [] }: SheetCell): string[] {
+  return [...new Set(mishaps)].filter((kind) => kind !== state)
+}
+
+function layersFinding({ isTrace, separationPercent: percent, label }: SheetCell): string {
+  if (isTrace) return 'separation a hairline'
+  return typeof percent === 'number' ? `separation ${percent.toFixed(1)} %` : label || 'read'
+}
+
+/** What stands beside the separation and does not count into it. */
+export function noted({ bleed, creamPercent }: SheetCell): string[] {
+  return [
+    ...(bleed ? [`bleed ${bleed} of 4`] : []),
+    ...(creamPercent ? [`cream layer ${creamPercent.toFixed(1)} %`] : []),
+  ]
 }

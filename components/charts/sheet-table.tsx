@@ -1,5 +1,5 @@
 import type { SheetProps } from './sheet-layout'
-import { rowName } from './sheet-names'
+import { happenedIn, noted, rowName } from './sheet-names'
 import { dayAfter, dayName, timeLabel, unitOf } from './time-scale'
 
 /** The sheet as plain rows and columns, for reading aloud, for copying, for print. */
@@ -45,7 +45,7 @@ export function SheetTable({ sheet, caption }: { sheet: SheetProps; caption: str
                 const isOut = cell?.posture === 'lying'
                 return (
                   <td key={weeks} className={`text-right ${isOut ? 'font-700 text-alarm' : ''}`}>
-                    {cell ? cell.label || cell.state : ''}
+                    {cell ? [cell.label || cell.state, ...noted(cell), ...happenedIn(cell)].join(', ') : ''}
                   </td>
                 )
               })}

@@ -9,6 +9,10 @@ export type JarLayers = {
   bottomPercent?: number
   /** Layers under this share of the fill cannot be read with a ruler and become a hairline. */
   detectionPercent?: number
+  /** Film, beads or drops on the wall without a layer, 0 to 4. */
+  bleed?: number
+  /** A cream layer, apart from oil and water. */
+  creamPercent?: number
 }
 
 /** From this height on a layer carries its texture; below it would be noise. */
@@ -40,7 +44,31 @@ export function layerShapes(frame: JarFrame, input: JarLayers): Shape[] {
     { kind: 'path', steps: insideSteps(frame, frame.fillTop), fill: 'cream' },
     ...(bottom === null ? [] : waterLayer(frame, bottom)),
     ...(top === null ? [] : oilLayer(frame, top)),
+    ...creamLine(frame, input.creamPercent ?? 0, top ?? 0),
+    ...beads(frame, input.bleed ?? 0),
   ]
+}
+
+/** The cream layer is emulsion still: only its lower edge is drawn, dotted, under what floats on it. */
+function creamLine(frame: JarFrame, percent: number, top: number): Shape[] {
+  if (percent <= 0) return []
+  const y = frame.fillTop + top + Math.max(2, (percent / 100) * (frame.fillBottom - frame.fillTop))
+  const { halfInside: x, wall } = frame
+  const width = Math.max(1, wall * 0.6)
+  return [{ kind: 'line', x1: -x, x2: x, y1: y, y2: y, stroke: 'dot', width, dash: [width, width * 1.6] }]
+}
+
+/** Drops on the wall, more and larger by grade; from 16 px on, where one can be told from the glass. */
+function beads(frame: JarFrame, bleed: number): Shape[] {
+  const { height, halfInside, fillTop, fillBottom } = frame
+  if (bleed <= 0 || height < 16) return []
+  const r = Math.max(0.9, height * (0.014 + 0.007 * bleed))
+  const fill = fillBottom - fillTop
+  return Array.from({ length: bleed + 1 }, (_, index): Shape => {
+    const side = index % 2 === 0 ? 1 : -1
+    const cy = fillBottom - fill * (0.3 + (0.5 * index) / Math.max(1, bleed))
+    return { kind: 'circle', cx: side * (halfInside - r), cy, r, fill: 'water' }
+  })
 }
 
 function waterLayer(frame: JarFrame, height: number): Shape[] {

@@ -10,6 +10,7 @@ import { Empty } from '@/components/ui/empty'
 import { isNarrowed } from '@/lib/list/rules'
 import type { ListQuery } from '@/lib/list/schema'
 import { grouped } from '@/lib/number/rules'
+import { hairlineText } from '@/lib/reading/rules/layers-words'
 import type { ReadingChain, ReadingEntry, StudyReadings as Page } from '@/lib/study/queries/readings'
 import { dayIn, spokenDay } from '@/lib/study/rules/calendar'
 import { jarName, readingList } from '@/lib/study/rules/reading-list'
@@ -166,7 +167,8 @@ function Cell({ of, entry, isCurrent, isAmended, timeZone }: CellProps) {
               ? 'void'
               : entry.value === null
                 ? (entry.word ?? entry.typed)
-                : shownWithUnit(attributeOf(entry.attribute, entry), entry.value)}
+                : (hairlineText(entry.detail) ??
+                  shownWithUnit(attributeOf(entry.attribute, entry), entry.value))}
           </span>
           {isCurrent && isAmended ? <span className="sr-only"> counts now</span> : null}
         </td>

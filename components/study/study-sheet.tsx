@@ -6,6 +6,8 @@ import useSWR from 'swr'
 import { CellStrip } from '@/components/charts/cell-strip'
 import { Sheet } from '@/components/charts/sheet'
 import { fetcher } from '@/lib/http/fetcher'
+import { mishapText } from '@/lib/jar/rules/mishap'
+import { besideLayers } from '@/lib/reading/rules/layers-words'
 import { namedJar } from '@/lib/jar/rules/code'
 import type { SheetPage, SheetShelf } from '@/lib/study/queries/sheet'
 import { spokenDay } from '@/lib/study/rules/calendar'
@@ -97,12 +99,14 @@ function Strip({ sheet, batchId, shelf, weeks }: StripProps) {
     cell.pullLabel,
     spokenDay(cell.dueOn || sheet.study.startedOn, false),
     ...(cell.readBy ? [`read by ${cell.readBy}`] : cell.state === 'read' ? [] : [cell.state]),
+    ...besideLayers(cell),
   ].join(', ')
   return (
     <div className="mt-6 lg:sticky lg:bottom-0 lg:z-10">
       <CellStrip
         code={cell.code ? namedJar(cell.code, shelf.station) : 'initial'}
         note={note}
+        happened={cell.mishaps.map((one) => mishapText(one, spokenDay(one.at.slice(0, 10), false)))}
         attributes={stripOf(shelf, weeks)}
         textAs={({ key, name, text }) => (
           <SeriesDetails

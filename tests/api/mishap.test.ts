@@ -3,6 +3,7 @@ import { GET as day } from '@/app/api/bench/route'
 import { POST as mishap } from '@/app/api/jars/[code]/mishaps/route'
 import { POST as log } from '@/app/api/pulls/[id]/readings/route'
 import { GET as follows, POST as takePlace } from '@/app/api/pulls/[id]/stand-in/route'
+import { GET as sheet } from '@/app/api/studies/[code]/sheet/route'
 import type { Bench } from '@/lib/bench/queries/today'
 import { newId } from '@/lib/db/id'
 import {
@@ -61,6 +62,30 @@ const pullStates = async (code: string) =>
   ).map((row) => row.state)
 
 describe('what happens to a jar', () => {
+  it('stands on the study sheet: in its cell, and at its station where nothing was asked of the jar', async () => {
+    const jar = jarAt(jars, 25, 6)
+    expect((await note(jar, { kind: 'broken', reason: 'slipped from the glove' })).status).toBe(200)
+    const spare = await t.db
+      .selectFrom('jar')
+      .innerJoin('studyStation as ss', 'ss.id', 'jar.studyStationId')
+      .select('jar.code')
+      .where('jar.studyId', '=', study.studyId)
+      .where('jar.kind', '=', 'spare')
+      .where('ss.temperatureC', '=', 25)
+      .executeTakeFirstOrThrow()
+    const alone = await note({ ...jar, code: spare.code }, { kind: 'lost', isJarAlone: true })
+    expect(alone.status).toBe(200)
+    const { body } = await call(sheet, { cookie: technician.cookie, params: { code: study.code } })
+    const row = body.shelves[0].rows.find(
+      (one: { station: { temperatureC: number } }) => one.station.temperatureC === 25,
+    )
+    expect(row.station.mishaps).toMatchObject([{ kind: 'lost', code: spare.code }])
+    const cell = row.cells.find((one: { weeks: number }) => one.weeks === 6)
+    expect(cell.mishaps).toMatchObject([
+      { kind: 'broken', code: jar.code, reason: 'slipped from the glove', by: technician.actor.initials },
+    ])
+  })
+
   it('R03: is kept with its kind, reason, person and time, on the trail; blank reasons are refused', async () => {
     const jar = jarAt(jars, 5, 1)
     expect((await note(jar, { kind: 'missed', reason: '  ' })).status).toBe(422)

@@ -147,3 +147,19 @@ describe('grid', () => {
     expect(nextPlace('Enter', { row: 0, cell: 0 }, layout.rows)).toBeNull()
   })
 })
+
+describe('what a cell says besides its number', () => {
+  const hot = row('45', [])
+  const said = (more: Partial<SheetCell>) => cellName(hot, cell(2, more), '2026-09-08', 26)
+
+  it('names a hairline as one, bleed and a cream layer beside it, and what happened to a jar', () => {
+    expect(said({ isTrace: true, label: 'trace', separationPercent: 0.8 })).toMatch(
+      /: separation a hairline$/,
+    )
+    expect(said({ bleed: 2, creamPercent: 5 })).toMatch(
+      /: separation 0\.0 %, bleed 2 of 4, cream layer 5\.0 %$/,
+    )
+    expect(said({ mishaps: ['broken'] })).toMatch(/: separation 0\.0 %, broken$/)
+    expect(said({ state: 'lost', mishaps: ['lost'] })).toMatch(/: lost$/)
+  })
+})

@@ -109,3 +109,25 @@ describe('jar', () => {
     expect(jarShapes({ height: 52, state: 'missed' })).toHaveLength(2)
   })
 })
+
+describe('what is noted beside the layers', () => {
+  const drawn = (more: object) => jarShapes({ height: 52, ...more })
+
+  it('is drops on the wall, more by grade, none where a jar is too small for them', () => {
+    const count = (bleed: number, height = 52) =>
+      jarShapes({ height, bleed }).filter((shape) => shape.kind === 'circle').length
+    expect([0, 1, 2, 3, 4].map((grade) => count(grade))).toEqual([0, 2, 3, 4, 5])
+    expect(count(4, 14)).toBe(0)
+  })
+
+  it('is the lower edge of a cream layer, under the oil that floats on it', () => {
+    const edge = (more: object) => {
+      const [line] = drawn(more).flatMap((shape) => (shape.kind === 'line' && shape.dash ? [shape.y1] : []))
+      return line
+    }
+    expect(edge({})).toBeUndefined()
+    const frame = jarFrame(52)
+    expect(edge({ creamPercent: 50 })).toBeCloseTo((frame.fillTop + frame.fillBottom) / 2)
+    expect(edge({ creamPercent: 50, topPercent: 10 })!).toBeGreaterThan(edge({ creamPercent: 50 })!)
+  })
+})

@@ -52,6 +52,21 @@ export function stateAfter(jar: Pick<JarOfMishap, 'state'>, kind: MishapKind): s
   return jar.state === 'resting' || jar.state === 'pulled' ? 'stored' : jar.state
 }
 
+/** One of them as the study's sheet tells it; what happened is said by its kind, why by the reason. */
+export type Mishap = { kind: MishapKind; code: string; reason: string; by: string; at: string }
+
+const deeds: Record<MishapKind, string> = {
+  missed: 'not read',
+  broken: 'broken',
+  lost: 'lost',
+  'wrong jar': 'opened by mistake',
+  'pulled early': 'pulled early',
+}
+
+export function mishapText({ kind, code, reason, by }: Mishap, day: string): string {
+  return `Jar ${code} ${deeds[kind]}, ${day}, ${by}: ${reason}`
+}
+
 const prefixes: Partial<Record<MishapKind, string>> = {
   broken: 'broken: ',
   lost: 'lost: ',

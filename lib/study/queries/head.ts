@@ -5,6 +5,7 @@ import { refuse } from '@/lib/http/errors'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
 import { phaseFraction, type PhaseLine } from '@/lib/science/phase-fraction'
 import { studiesOf } from './scope'
+import { mishapsWhere } from './parts'
 
 export type StudyAmendment = {
   number: number
@@ -132,6 +133,11 @@ export async function listStudyStations(db: Db, studyId: string) {
       'station.cycleLowC',
       'station.cycleHighC',
     ])
+    // Of jars that no pull asked for at that moment: a spare that broke on its shelf.
+    .select(
+      mishapsWhere(sql`m.study_id = study_station.study_id and m.pull_jar_id is null
+        and its.study_station_id = study_station.id`),
+    )
     .where('studyStation.studyId', '=', studyId)
     .orderBy('studyStation.position')
     .execute()

@@ -1,8 +1,18 @@
-import { sql } from 'kysely'
+import { sql, type RawBuilder } from 'kysely'
 import type { Db } from '@/lib/db/client'
+import type { Mishap } from '@/lib/jar/rules/mishap'
+import type { SeenLayers } from '@/lib/reading/rules/layers-words'
 import { meanKineticTemperature } from '@/lib/science/mean-kinetic-temperature'
 import { hoursOfEntries } from '@/lib/science/temperature-log'
 import type { SeriesFinding, Standing } from '@/lib/science/series'
+
+/** What happened to jars besides being read, in the order in which it happened. */
+export function mishapsWhere(condition: RawBuilder<unknown>) {
+  return sql<Mishap[]>`(select coalesce(jsonb_agg(jsonb_build_object('kind', m.kind, 'code', its.code,
+      'reason', m.reason, 'by', who.initials, 'at', m.happened_at) order by m.happened_at, m.id), '[]')
+    from jar_mishap m join jar its on its.id = m.jar_id join person who on who.id = m.recorded_by
+    where ${condition})`.as('mishaps')
+}
 
 // The parts that the pages of a study share; each is one statement whatever the study's size.
 
@@ -31,6 +41,7 @@ export async function listStudyPullJars(db: Db, studyId: string) {
       'jar.state as jarState',
       'opener.initials as openedBy',
     ])
+    .select(mishapsWhere(sql`m.pull_jar_id = pull_jar.id`))
     .where('pullJar.studyId', '=', studyId)
     .orderBy('pull.timeWeeks')
     .orderBy('pullJar.asks', 'desc')
@@ -77,11 +88,9 @@ export async function listOpenFlags(db: Db, studyId: string) {
 }
 export type OpenFlag = Awaited<ReturnType<typeof listOpenFlags>>[number]
 
-export type ReadingDetail = {
+export type ReadingDetail = SeenLayers & {
   topMm?: number
   bottomMm?: number
-  totalMm?: number
-  bleed?: number
   torquePercent?: number
   spindle?: string
   rpm?: number

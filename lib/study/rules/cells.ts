@@ -1,3 +1,5 @@
+import type { Mishap } from '@/lib/jar/rules/mishap'
+import { hairlineText, type SeenLayers } from '@/lib/reading/rules/layers-words'
 import { attributeOf, type Describing } from '@/lib/reading/schema/attributes'
 import { isBeyondBand } from '@/lib/science/band'
 import { mean } from '@/lib/science/mean'
@@ -6,7 +8,7 @@ import type { Band, SeriesFinding, Standing } from '@/lib/science/series'
 import { shownValue, shownWithUnit } from './words'
 
 export type Posture = 'upright' | 'leaning' | 'lying'
-export type CellState = 'read' | 'due' | 'planned' | 'missed' | 'resting' | 'broken'
+export type CellState = 'read' | 'due' | 'planned' | 'missed' | 'resting' | 'broken' | 'lost'
 
 type PullJar = {
   pullId: string
@@ -21,6 +23,7 @@ type PullJar = {
   state: string
   jarState: string
   code: string
+  mishaps?: Mishap[]
 }
 type Reading = {
   id: string
@@ -30,7 +33,7 @@ type Reading = {
   attribute: string
   value: number | null
   readBy: string
-  detail: { topMm?: number; bottomMm?: number; totalMm?: number }
+  detail: SeenLayers & { topMm?: number; bottomMm?: number }
 }
 type Series = {
   batchId: string
@@ -53,6 +56,12 @@ export type Cell = {
   topPercent: number | null
   bottomPercent: number | null
   separationPercent: number | null
+  /** Seen and too thin for the ruler: drawn as a hairline, and written as one. */
+  isTrace: boolean
+  /** Bleed on the wall, 0 to 4, and a cream layer in percent: beside the separation, not in it. */
+  bleed: number
+  creamPercent: number
+  mishaps: Mishap[]
   code: string | null
   readBy: string | null
   values: CellValue[]
@@ -112,6 +121,8 @@ function initialCell(own: Own, series: Series[]): Cell {
     topPercent: 0,
     bottomPercent: 0,
     separationPercent: 0,
+    ...nothingBeside,
+    mishaps: [],
     code: null,
     readBy: own.readings.find((r) => r.batchId === own.batchId && r.studyStationId === null)?.readBy ?? null,
     values: series.map(({ attribute, finding }) => ({
@@ -131,9 +142,11 @@ function pullCell(jars: PullJar[], own: Own, series: Series[], before: Cell): Ce
   const watched = layersOf(readings, own.fillHeightMm)
   const values = series.map(({ attribute, finding }) => {
     const now = shownOf(readings, attribute)
+    const text = attribute === 'separation' && watched ? watched.text : null
     const last = before.values.find((value) => value.attribute === attribute)
     return {
       ...valueOf(attribute, own.plan, finding, now),
+      ...(text === null ? {} : { text }),
       initial: finding.initial,
       last: last?.now ?? last?.last ?? null,
     }
@@ -144,11 +157,13 @@ function pullCell(jars: PullJar[], own: Own, series: Series[], before: Cell): Ce
     pullLabel: first.label,
     dueOn: first.dueOn,
     state,
-    label: labelOf(state, watched?.separationPercent ?? null, first, own.today),
+    label: labelOf(state, watched, first, own.today),
     posture: postureOf(series, new Set(readings.map((reading) => reading.id))),
     topPercent: watched?.topPercent ?? null,
     bottomPercent: watched?.bottomPercent ?? null,
     separationPercent: watched?.separationPercent ?? null,
+    ...(watched?.beside ?? nothingBeside),
+    mishaps: jars.flatMap((jar) => jar.mishaps ?? []),
     code: first.code,
     readBy: readings.at(-1)?.readBy ?? null,
     values,
@@ -159,19 +174,35 @@ function stateOf(jars: PullJar[], readings: Reading[], today: string): CellState
   if (readings.length > 0 || jars.some((jar) => jar.state === 'done')) return 'read'
   if (jars.some((jar) => jar.state === 'resting')) return 'resting'
   if (jars.every((jar) => jar.state === 'missed')) {
-    return jars.every((jar) => jar.jarState === 'lost') ? 'broken' : 'missed'
+    if (!jars.every((jar) => jar.jarState === 'lost')) return 'missed'
+    const isLost = jars.some((jar) => jar.mishaps?.at(-1)?.kind === 'lost')
+    return isLost ? 'lost' : 'broken'
   }
   return jars[0]!.windowFrom <= today ? 'due' : 'planned'
 }
 
-function labelOf(state: CellState, separation: number | null, pull: PullJar, today: string): string {
-  if (state === 'read') return separation === null ? '' : shownValue(attributeOf('separation'), separation)
+function labelOf(state: CellState, seen: Seen | null, pull: PullJar, today: string): string {
+  if (state === 'read') {
+    if (seen === null) return ''
+    return seen.beside.isTrace ? 'trace' : shownValue(attributeOf('separation'), seen.separationPercent)
+  }
   if (state === 'due') return pull.windowTo < today ? 'late' : 'due'
   return state === 'planned' ? '' : state
 }
 
+const nothingBeside = { isTrace: false, bleed: 0, creamPercent: 0 }
+
+type Seen = {
+  topPercent: number
+  bottomPercent: number
+  separationPercent: number
+  /** In place of the number, where it is none. */
+  text: string | null
+  beside: typeof nothingBeside
+}
+
 /** Several jars of one pull: the worst counts, and its layers are the ones drawn. */
-function layersOf(readings: Reading[], fillHeightMm: number) {
+function layersOf(readings: Reading[], fillHeightMm: number): Seen | null {
   const layers = readings
     .filter((reading) => reading.attribute === 'separation' && reading.value !== null)
     .map(({ value, detail }) => {
@@ -182,6 +213,12 @@ function layersOf(readings: Reading[], fillHeightMm: number) {
         // What was only typed in percent lies below, as water does in most that come apart.
         bottomPercent: bottomMm === undefined ? Math.max(0, value! - topPercent) : bottomPercent,
         separationPercent: value!,
+        text: hairlineText(detail),
+        beside: {
+          isTrace: detail.isUnderRuler ?? false,
+          bleed: detail.bleed ?? 0,
+          creamPercent: detail.creamPercent ?? 0,
+        },
       }
     })
   return layers.toSorted((a, b) => b.separationPercent - a.separationPercent)[0] ?? null
