@@ -1,35 +1,51 @@
 'use client'
 
 import { useState } from 'react'
+import { useOutbox } from '@/components/device/use-outbox'
 import { JarGlyph } from '@/components/marks/jar-glyph'
 import { Button } from '@/components/ui/button'
 import { ErrorNote } from '@/components/ui/error-note'
+import { toast } from '@/components/ui/toast'
+import type { BenchJar } from '@/lib/bench/queries/bench-jar'
 import { newId } from '@/lib/db/id'
-import { send } from '@/lib/http/fetcher'
 import type { Substitute, WhatFollows } from '@/lib/pull/queries/what-follows'
 import { pullKeys } from '@/lib/pull/keys'
 
 type Props = {
-  pullJarId: string
+  jar: Pick<BenchJar, 'name' | 'code' | 'pullJarId'>
   follows: WhatFollows
-  onTaken: (code: string) => void
+  /** With its code; without one while that waits on this device, where the jar is not asked for yet. */
+  onTaken: (code?: string) => void
   onNone: () => void
 }
 
 /** What a jar that is not read means for its trends, and the spares and retains that could be read instead. */
-export function FollowsList({ pullJarId, follows, onTaken, onNone }: Props) {
+export function FollowsList({ jar, follows, onTaken, onNone }: Props) {
+  const { items, send } = useOutbox()
   const [error, setError] = useState<unknown>(null)
   const [taking, setTaking] = useState<string | null>(null)
+  const url = pullKeys.standIn(jar.pullJarId)
+  const waiting = items.find((item) => item.url === url)
+  const chosen = follows.substitutes.find((one) => one.jarId === waiting?.body['jarId'])
 
-  async function take({ jarId }: Substitute) {
+  async function take({ jarId, code, name }: Substitute) {
     setTaking(jarId)
     setError(null)
     try {
-      const { code } = await send<{ code: string }>(pullKeys.standIn(pullJarId), 'POST', {
-        id: newId(),
-        jarId,
+      const { how } = await send({
+        url,
+        body: { id: newId(), jarId },
+        about: {
+          ...{ kind: 'missed', label: `Jar ${jar.name}`, code: jar.code, pullJarId: jar.pullJarId },
+          ...{ what: `${name} takes its place`, href: `/bench/${jar.code}` },
+        },
       })
-      onTaken(code)
+      if (how === 'sent') return onTaken(code)
+      toast(`${name} takes the place of ${jar.name}`, {
+        density: 'bench',
+        detail: 'Kept on this tablet; it is asked for once that is sent.',
+      })
+      onTaken()
     } catch (refused) {
       setError(refused)
       setTaking(null)
@@ -44,7 +60,11 @@ export function FollowsList({ pullJarId, follows, onTaken, onNone }: Props) {
         </p>
       ))}
       {follows.takenBy ? <p className="text-20">Jar {follows.takenBy.code} takes its place.</p> : null}
-      {follows.substitutes.length > 0 ? (
+      {waiting ? (
+        <p className="text-20">
+          {chosen ? `Jar ${chosen.name}` : 'Another jar'} takes its place: kept on this tablet, not sent yet.
+        </p>
+      ) : follows.substitutes.length > 0 ? (
         <>
           <h3 className="text-20 font-650">Or read another jar in its place</h3>
           <ul className="flex flex-col gap-3">
@@ -72,7 +92,7 @@ export function FollowsList({ pullJarId, follows, onTaken, onNone }: Props) {
       )}
       <ErrorNote error={error} />
       <Button density="bench" className="self-end" onClick={onNone}>
-        {follows.substitutes.length > 0 ? 'Leave it unread' : 'Back to the walk'}
+        {follows.substitutes.length > 0 && !waiting ? 'Leave it unread' : 'Back to the walk'}
       </Button>
     </div>
   )

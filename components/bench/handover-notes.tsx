@@ -1,28 +1,40 @@
 'use client'
 
 import { useState } from 'react'
+import { useOutbox } from '@/components/device/use-outbox'
 import { Button } from '@/components/ui/button'
 import { ErrorNote } from '@/components/ui/error-note'
 import type { Bench } from '@/lib/bench/queries/today'
 import { newId } from '@/lib/db/id'
 import { handoverKeys } from '@/lib/handover/keys'
-import { send } from '@/lib/http/fetcher'
 import { dayText } from '@/lib/report/rules'
 
 type Props = { notes: Bench['notes']; mayRead: boolean; onChange: () => void }
 
 /** What the shift before left to be known; each stays until somebody says that it is read. */
 export function HandoverNotes({ notes, mayRead, onChange }: Props) {
+  const { items, send } = useOutbox()
   const [error, setError] = useState<unknown>(null)
   const [reading, setReading] = useState<string | null>(null)
   const open = notes.filter((note) => note.readAt === null)
   if (open.length === 0) return null
 
-  async function read(id: string) {
+  const isWaiting = (id: string) => items.some((item) => item.url === handoverKeys.read(id))
+
+  async function read({ id, text }: (typeof notes)[number]) {
     setReading(id)
     setError(null)
     try {
-      await send(handoverKeys.read(id), 'POST', { id: newId() })
+      await send({
+        url: handoverKeys.read(id),
+        body: { id: newId() },
+        about: {
+          kind: 'handover',
+          label: 'A note of the shift before is read',
+          what: text.slice(0, 80),
+          href: '/bench',
+        },
+      })
       onChange()
     } catch (refused) {
       setError(refused)
@@ -41,8 +53,10 @@ export function HandoverNotes({ notes, mayRead, onChange }: Props) {
               {note.by}, {dayText(note.writtenAt)}
             </p>
           </div>
-          {mayRead ? (
-            <Button density="bench" busy={reading === note.id} onClick={() => void read(note.id)}>
+          {isWaiting(note.id) ? (
+            <p className="text-17 font-650">Read, not sent yet</p>
+          ) : mayRead ? (
+            <Button density="bench" busy={reading === note.id} onClick={() => void read(note)}>
               Read
             </Button>
           ) : null}

@@ -75,12 +75,7 @@ export function MissDialog({ jar, isEarly = false, onClose, onDone }: Props) {
   if (noted?.follows) {
     return (
       <Dialog isOpen onClose={() => onDone()} title={`${jar.name} is noted as not read`} density="bench">
-        <FollowsList
-          pullJarId={jar.pullJarId}
-          follows={noted.follows}
-          onTaken={(code) => onDone(code)}
-          onNone={() => onDone()}
-        />
+        <FollowsList jar={jar} follows={noted.follows} onTaken={onDone} onNone={() => onDone()} />
       </Dialog>
     )
   }

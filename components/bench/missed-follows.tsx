@@ -22,7 +22,14 @@ export function MissedFollows({
 }) {
   const { data } = useSWR<WhatFollows>(pullKeys.standIn(jar.pullJarId), fetcher)
   if (!data) return null
-  return <FollowsList pullJarId={jar.pullJarId} follows={data} onTaken={onOpen} onNone={onWalk} />
+  return (
+    <FollowsList
+      jar={jar}
+      follows={data}
+      onTaken={(code) => (code === undefined ? onWalk() : onOpen(code))}
+      onNone={onWalk}
+    />
+  )
 }
 
 /** A jar whose window is still to come: it can be pulled early, with the reason. */

@@ -1,8 +1,7 @@
 'use client'
 
-import { useCallback, useSyncExternalStore } from 'react'
-import { useDevice } from '@/components/device/device-context'
 import { useKept } from '@/components/device/use-kept'
+import { useReadDrafts } from '@/components/device/use-read-drafts'
 import { Button } from '@/components/ui/button'
 
 /** How many stations' days the device remembers as read; the oldest go. */
@@ -13,13 +12,8 @@ type Props = { stationId: string; day: string; caution: string }
 /** What to mind at a station: large until this person has read it that day on this tablet, then in the quiet line. */
 export function useCaution({ stationId, day, caution }: Props) {
   const [{ read }, change] = useKept<{ read: string[] }>('cautions', { read: [] })
-  const drafts = useDevice()?.drafts ?? null
   // Until the device was read, nobody knows whether it is new; a line that jumped would be in the way.
-  const isKnown = useSyncExternalStore(
-    useCallback((listen: () => void) => drafts?.onChange(listen) ?? (() => undefined), [drafts]),
-    () => drafts?.isRead() ?? false,
-    () => false,
-  )
+  const isKnown = useReadDrafts() !== null
   const key = `${stationId} ${day}`
   return {
     isNew: isKnown && caution !== '' && !read.includes(key),

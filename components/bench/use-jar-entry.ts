@@ -2,7 +2,7 @@
 
 import { useEffect, useMemo, useRef, useState } from 'react'
 import { askLocally, type AlreadyRead, type Answer } from '@/components/bench/answers'
-import { dayInstrument, rememberInstrument } from '@/components/bench/day-instrument'
+import { dayInstrument, instrumentKind, type ChosenInstruments } from '@/components/bench/day-instrument'
 import {
   conditionsUsed,
   emptyDraft,
@@ -65,6 +65,7 @@ export function useJarEntry(options: Options) {
   )
   const draftKey = part === undefined ? `jar.${jar.pullJarId}` : `jar.${jar.pullJarId}.${part}`
   const [draft, setDraft] = useKept(draftKey, emptyDraft(''))
+  const [chosen, setChosen] = useKept<ChosenInstruments>('instruments', {})
   const slots = useMemo(
     () => slotsOf(fields, jar.tareG !== null && jar.grossG !== null, draft.direct),
     [fields, jar.tareG, jar.grossG, draft.direct],
@@ -79,8 +80,8 @@ export function useJarEntry(options: Options) {
   const [isBusy, setBusy] = useState(false)
   const opening = useOpening(jar, mayType && part === undefined, onChange)
   const entries = useMemo(
-    () => entriesOf(slots, draft, jar.fillHeightMm, (s) => dayInstrument(jar, s)),
-    [slots, draft, jar],
+    () => entriesOf(slots, draft, jar.fillHeightMm, (s) => dayInstrument(jar, s, chosen)),
+    [slots, draft, jar, chosen],
   )
   const tabs = slots.map((slot): FieldTab => {
     const entry = entries.find((e) => e.attribute === slot.field.attribute && e.replicate === slot.replicate)
@@ -118,7 +119,8 @@ export function useJarEntry(options: Options) {
   }
 
   function chooseInstrument(slot: Slot, id: string) {
-    rememberInstrument(slot, id)
+    const kind = instrumentKind(slot)
+    if (kind) setChosen({ [kind]: id })
     setDraft((d) => ({
       ...d,
       instruments: { ...d.instruments, [`${slot.field.attribute}.${slot.replicate}`]: id },
@@ -156,7 +158,7 @@ export function useJarEntry(options: Options) {
     const confirmed = [...new Set([...filled.confirmed, ...(extra.confirmed ?? [])])]
     const sending = { ...filled, confirmed }
     setDraft(() => sending)
-    const readings = entriesOf(slots, sending, jar.fillHeightMm, (s) => dayInstrument(jar, s))
+    const readings = entriesOf(slots, sending, jar.fillHeightMm, (s) => dayInstrument(jar, s, chosen))
     const missing = fields.filter((f) => !readings.some((r) => r.attribute === f.attribute))
     setBusy(true)
     // Opening counts as a change of the jar; the jar as it is shown may still be the one before.
@@ -238,7 +240,7 @@ export function useJarEntry(options: Options) {
     ...{ slots, tabs, groups, open, entries, draft, at, error, asked, twice, isBusy },
     kept: outbox.items.find(isThisJar),
     instrumentOf: (slot: Slot) =>
-      draft.instruments[`${slot.field.attribute}.${slot.replicate}`] ?? dayInstrument(jar, slot),
+      draft.instruments[`${slot.field.attribute}.${slot.replicate}`] ?? dayInstrument(jar, slot, chosen),
     goTo,
     note: (note: string) => setDraft((d) => ({ ...d, note })),
     ...{ type, fill, measure, step, save, chooseInstrument, setConditions, heightOf, setHeight },

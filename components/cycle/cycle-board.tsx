@@ -21,6 +21,7 @@ export function CycleBoard({ mayLog }: { mayLog: boolean }) {
   const now = useServerClock(board?.now)
   if (!board || !now) return null
   const places = board.places
+    .map((place) => presses.withKept(place, now))
     .map((place) => ({ place, state: stateOf(place, now) }))
     .toSorted((a, b) => rank(a.state) - rank(b.state))
   const isThrough = ({ place, state }: (typeof places)[number]) =>

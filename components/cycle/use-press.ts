@@ -4,7 +4,9 @@ import { useOutbox } from '@/components/device/use-outbox'
 import { toast } from '@/components/ui/toast'
 import type { CyclePlace } from '@/lib/cycle/queries/board'
 import { cycleKeys } from '@/lib/cycle/keys'
+import type { CyclePressInput } from '@/lib/cycle/schema'
 import { newId } from '@/lib/db/id'
+import { withWaiting } from './waiting-presses'
 
 type Half = { cycle: number; half: 'cold' | 'warm' }
 const words = { begin: 'begins', hold: 'is held', 'go on': 'goes on', end: 'has ended' } as const
@@ -47,5 +49,16 @@ export function usePress(onDone: () => void) {
     })
     onDone()
   }
-  return { press, keptAt: (placeId: string) => kept.filter((item) => item.about.subject === placeId) }
+  const keptAt = (placeId: string) => kept.filter((item) => item.about.subject === placeId)
+  return {
+    press,
+    keptAt,
+    /** As it will stand once what waits here has arrived; a refused press changes nothing. */
+    withKept: (place: CyclePlace, now: string) =>
+      withWaiting(
+        place,
+        keptAt(place.id).flatMap(({ body, refusal }) => (refusal ? [] : [body as CyclePressInput])),
+        now,
+      ),
+  }
 }

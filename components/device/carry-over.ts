@@ -61,22 +61,22 @@ async function carryItems<Old extends { personId: string }>(
   await outbox.readAgain()
 }
 
-/** "stillstand.draft.PERSON.PULLJAR", "stillstand.batch-draft.[balance.]PERSON[.…]" */
+/** "stillstand.draft.PERSON.PULLJAR", "stillstand.batch-draft.[balance.]PERSON[.…]", "stillstand:formula:PERSON:VERSION" */
 async function carryDrafts({ personId, store, drafts }: Device): Promise<void> {
-  await drafts.ready
   const places = Array.from({ length: localStorage.length }, (_, at) => localStorage.key(at) ?? '')
   const own = places.flatMap((place): { place: string; key: string }[] => {
-    const [, kind, rest] = /^stillstand\.(draft|batch-draft)\.(.*)$/.exec(place) ?? []
+    const [, kind, rest] = /^stillstand[.:](draft|batch-draft|formula)[.:](.*)$/.exec(place) ?? []
     if (!rest?.includes(personId)) return []
-    const key = rest.replace(personId, '').replace(/^\.|\.$/, '')
-    return [{ place, key: kind === 'draft' ? `jar.${key}` : `batch.${key}` }]
+    const key = rest.replace(personId, '').replace(/^[.:]|\.$/, '')
+    return [{ place, key: kind === 'draft' ? `jar.${key}` : `${kind === 'formula' ? kind : 'batch'}.${key}` }]
   })
-  const brought = own.map(({ place, key }): [string, unknown] => [
-    key,
-    JSON.parse(localStorage.getItem(place) ?? 'null') ?? undefined,
-  ])
-  if (brought.length === 0) return
-  await store.keepDrafts(brought)
-  for (const [key, draft] of brought) drafts.change(key, (now) => now ?? draft)
+  // Before the device has been read, so that a form that asks then finds it.
+  for (const { place, key } of own) {
+    const draft: unknown = JSON.parse(localStorage.getItem(place) ?? 'null') ?? undefined
+    drafts.change(key, (now) => now ?? draft)
+  }
+  if (own.length === 0) return
+  await drafts.ready
+  await store.keepDrafts(own.map(({ key }): [string, unknown] => [key, drafts.find(key)]))
   for (const { place } of own) localStorage.removeItem(place)
 }

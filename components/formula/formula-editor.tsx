@@ -2,6 +2,7 @@
 
 import Link from 'next/link'
 import { useEffect, useEffectEvent, useMemo } from 'react'
+import type { Drafts } from '@/components/device/drafts'
 import { Heading } from '@/components/ui/heading'
 import type { FormulaPage } from '@/lib/formula/queries/get-formula'
 import { formulaFinding } from '@/lib/formula/rules/finding'
@@ -24,15 +25,14 @@ import type { FormulaPart } from './formula-view'
 type Props = {
   formula: FormulaPage
   part: FormulaPart
-  personId: string
   mayWrite: boolean
-  isClient: boolean
+  drafts: Drafts | null
   onReload: () => void
   onSaved: () => void
 }
 
-export function FormulaEditor({ formula, part, personId, mayWrite, isClient, onReload, onSaved }: Props) {
-  const handle = useDraft(formula, personId, isClient)
+export function FormulaEditor({ formula, part, mayWrite, drafts, onReload, onSaved }: Props) {
+  const handle = useDraft(formula, drafts)
   const { draft, amounts } = handle
   const isOpen = mayWrite && formula.state === 'draft'
   const totals = useMemo(() => formulaTotals(amounts), [amounts])

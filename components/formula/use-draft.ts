@@ -1,6 +1,7 @@
 'use client'
 
 import { useCallback, useEffect, useMemo, useState } from 'react'
+import type { Drafts } from '@/components/device/drafts'
 import { newId } from '@/lib/db/id'
 import { ClientError, send } from '@/lib/http/fetcher'
 import type { FormulaPage } from '@/lib/formula/queries/get-formula'
@@ -9,21 +10,21 @@ import { targetPhOf, targetPhText } from '@/lib/formula/rules/target-ph'
 import { readAmounts, typeLine, typeStep, type TypedLine, type TypedStep } from '@/lib/formula/rules/typed'
 import { fromFields, noProblems, readDraft, type Draft } from './read-draft'
 
-const placeOf = (versionId: string, personId: string) => `stillstand:formula:${personId}:${versionId}`
+const keyOf = (versionId: string) => `formula.${versionId}`
 
-/** Whether this person typed here before a reload; only the browser knows. */
-export function hasKeptDraft(versionId: string, personId: string): boolean {
-  return readKept(placeOf(versionId, personId)) !== null
+/** Whether this person typed here before a reload; only the device knows. */
+export function hasKeptDraft(versionId: string, drafts: Drafts): boolean {
+  return readKept(drafts.find(keyOf(versionId))) !== null
 }
 
 /** What changes a draft; `at` names the field, so that typing on in it is one step to take back. */
 export type ChangeDraft = (change: (draft: Draft) => Partial<Draft>, at?: string | null) => void
 
 /** The draft on screen: what the server has, or what this person typed here before a reload. */
-export function useDraft(formula: FormulaPage, personId: string, isClient: boolean) {
-  const place = placeOf(formula.versionId, personId)
+export function useDraft(formula: FormulaPage, drafts: Drafts | null) {
+  const key = keyOf(formula.versionId)
   const server = useMemo(() => draftOf(formula), [formula])
-  const [kept] = useState(() => (isClient && formula.state === 'draft' ? readKept(place) : null))
+  const [kept] = useState(() => (drafts && formula.state === 'draft' ? readKept(drafts.find(key)) : null))
   const [base, setBase] = useState(server)
   const [history, setHistory] = useState<History<Draft>>(() => begin(kept ?? server))
   const [problems, setProblems] = useState(noProblems)
@@ -34,10 +35,9 @@ export function useDraft(formula: FormulaPage, personId: string, isClient: boole
   const isDirty = useMemo(() => textOf(draft) !== baseText, [draft, baseText])
 
   useEffect(() => {
-    if (!isClient || formula.state !== 'draft') return
-    if (isDirty) localStorage.setItem(place, JSON.stringify(draft))
-    else localStorage.removeItem(place)
-  }, [isClient, isDirty, draft, place, formula.state])
+    if (!drafts || formula.state !== 'draft') return
+    if (isDirty || drafts.find(key) !== undefined) drafts.change(key, () => (isDirty ? draft : undefined))
+  }, [drafts, isDirty, draft, key, formula.state])
 
   const change: ChangeDraft = useCallback((next, at = null) => {
     setHistory((was) => {
@@ -108,20 +108,12 @@ function normal(part: string | TypedLine | TypedStep): unknown {
   return Object.entries(part).toSorted(([a], [b]) => (a < b ? -1 : 1))
 }
 
-function readKept(place: string): Draft | null {
-  try {
-    const kept = JSON.parse(localStorage.getItem(place) ?? 'null') as Draft | null
-    // One that was kept before there was a target pH, or what to look for in a step, has none.
-    return kept && Array.isArray(kept.lines) && Array.isArray(kept.steps)
-      ? {
-          ...kept,
-          targetPh: kept.targetPh ?? '',
-          steps: kept.steps.map((step) => ({ ...step, lookFor: step.lookFor ?? '' })),
-        }
-      : null
-  } catch {
-    return null
-  }
+function readKept(found: unknown): Draft | null {
+  const kept = found as Draft | null | undefined
+  if (!kept || !Array.isArray(kept.lines) || !Array.isArray(kept.steps)) return null
+  // One that was kept before there was a target pH, or what to look for in a step, has none.
+  const steps = kept.steps.map((step) => ({ ...step, lookFor: step.lookFor ?? '' }))
+  return { ...kept, targetPh: kept.targetPh ?? '', steps }
 }
 
 /** The version is the server's; taking a change back does not take a save back. */

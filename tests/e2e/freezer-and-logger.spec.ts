@@ -1,22 +1,37 @@
+import type { CycleBoard } from '@/lib/cycle/queries/board'
 import { openAs } from './people'
 import { expect, test } from './watch'
 
-// At the freezer a half that runs is held over the weekend and goes on; one that is ended short says so before it ends.
+// At the freezer, where no network reaches, a half that runs is held over the weekend and goes on: the board moves on by
+// itself, and each press arrives once. One that is ended short says so before it ends.
 // A logger's file is shown with its bad row, then taken.
 
-test('A half is held and ended at the board, and a logger’s file is taken', async ({ page }) => {
+test('A half is held and ended at the board, and a logger’s file is taken', async ({
+  page,
+  context,
+  watch,
+}) => {
   await page.setViewportSize({ width: 820, height: 1180 })
   await openAs(page, 'jos', '/cycles')
   const running = page.getByRole('listitem').filter({ hasText: 'Silicone cream SI82, second batch' })
   await expect(page.getByRole('heading', { level: 1 })).toContainText(/overdue/)
+  watch.expectNoNetwork()
+  await context.setOffline(true)
   await running.getByRole('button', { name: 'Hold it' }).click()
   const dialog = page.getByRole('dialog')
   await dialog.getByRole('button', { name: 'weekend' }).click()
   await dialog.getByRole('button', { name: 'Hold it' }).click()
   await expect(running).toContainText(/held since .*: weekend/)
+  await expect(running).toContainText('One press kept on this device, not sent yet.')
   await running.getByRole('button', { name: 'Go on' }).click()
   await dialog.getByRole('button', { name: 'Go on' }).click()
   await expect(running).not.toContainText('held since')
+  await expect(running).toContainText('Two presses kept on this device, not sent yet.')
+  await context.setOffline(false)
+  await expect(running).not.toContainText('not sent yet', { timeout: 20_000 })
+  const { places } = (await (await page.request.get('/api/cycles/board')).json()) as CycleBoard
+  const pressed = places.find((place) => place.studyTitle.includes('SI82, second'))!.presses.slice(-2)
+  expect(pressed.map((one) => one.press)).toEqual(['hold', 'go on'])
 
   await running.getByRole('button', { name: /^End the/ }).click()
   await dialog.getByLabel(/^Reached/).fill('-4')

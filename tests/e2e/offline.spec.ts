@@ -14,7 +14,7 @@ test.use({ viewport })
 
 let study: WalkStudy
 test.beforeAll(async () => {
-  study = await walkStudy(most + 1)
+  study = await walkStudy(most + 2)
 })
 test.afterAll(() => study.close())
 
@@ -126,6 +126,48 @@ test('A04, A12: what was typed outlives the session, and waits unseen while anot
   await context.addCookies(cookies)
   await page.goto(`/bench`)
   await expect.poll(async () => (await arrived()).readings).toContain(code)
+})
+
+test('D09: a note marked as read and a stand-in, pressed without network, arrive once each', async ({
+  page,
+  context,
+  watch,
+}) => {
+  const { code, pullJarId } = study.jars[most + 1]!
+  const text = `Oven door left ajar, ${code}`
+  await openAs(page, 'mada', '/bench')
+  await page.getByRole('button', { name: 'Hand over' }).click()
+  await page.getByLabel('For the next shift').fill(text)
+  await page.getByRole('button', { name: 'Leave the note' }).click()
+  const note = page.getByRole('region', { name: 'Notes from the shift before' })
+  await expect(note).toContainText(text)
+
+  await page.goto(`/bench/${code}`)
+  await page.getByRole('button', { name: 'Cannot be read' }).click()
+  const dialog = page.getByRole('dialog')
+  await dialog.getByRole('button', { name: 'broken' }).click()
+  await dialog.getByRole('button', { name: 'Note it as not read' }).click()
+  const spare = dialog.getByRole('listitem').filter({ hasText: 'spare' }).first().getByRole('button')
+  await expect(spare).toBeVisible()
+  watch.expectNoNetwork()
+  await context.setOffline(true)
+  await spare.click()
+  await expect(dialog).toHaveCount(0)
+  await page.getByRole('button', { name: 'Back to the walk' }).click()
+  await note.getByRole('button', { name: 'Read' }).first().click()
+  await expect(note).toContainText('Read, not sent yet')
+  await expect(page.getByRole('button', { name: '2 kept on this tablet' })).toBeVisible()
+
+  await context.setOffline(false)
+  await expect(page.getByText('Ready without network'), 'nothing waits').toBeVisible({ timeout: 20_000 })
+  const standIns = study.db.selectFrom('pullJar').select('id').where('standsInFor', '=', pullJarId)
+  expect(await standIns.execute()).toHaveLength(1)
+  const readOf = study.db
+    .selectFrom('handoverRead as r')
+    .innerJoin('handoverNote as n', 'n.id', 'r.handoverNoteId')
+    .select('r.id')
+    .where('n.text', '=', text)
+  expect(await readOf.execute()).toHaveLength(1)
 })
 
 /** As an empty battery would: no process of this browser gets to say goodbye. */

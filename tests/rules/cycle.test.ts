@@ -1,4 +1,6 @@
 import { describe, expect, it } from 'vitest'
+import { withWaiting } from '@/components/cycle/waiting-presses'
+import type { CyclePlace } from '@/lib/cycle/queries/board'
 import { shortfalls } from '@/lib/cycle/rules/shortfall'
 import { cycleState, type CyclePress, type CycleRecord, type Running } from '@/lib/cycle/rules/state'
 
@@ -93,5 +95,30 @@ describe('in what a half fell short', () => {
     ['a cool thaw', { half: 'warm', reachedC: 20, hours: 8 }, ['It reached 20 °C, 25 °C is asked for.']],
   ])('%s', (_name, more, expected) => {
     expect(shortfalls(place, { ...half, ...more }, asked)).toEqual(expected)
+  })
+})
+
+describe('presses that wait on the device', () => {
+  const place = { ...record({ presses: [press('begin', friday)] }), asked: null } as unknown as CyclePlace
+  const half = { studyStationId: place.id, cycle: 1, half: 'cold' as const }
+  const state = (waiting: Parameters<typeof withWaiting>[1], now: string) =>
+    cycleState({ ...withWaiting(place, waiting, now), asked: undefined }, now)
+
+  it('an end and the next beginning move the place on to its warm half, once and in order', () => {
+    const ended = { ...half, id: 'a', press: 'end' as const, claimedAt: after(16) }
+    const begun = { ...half, half: 'warm' as const, id: 'b', press: 'begin' as const, claimedAt: after(17) }
+    expect(state([ended], after(18))).toMatchObject({ kind: 'waiting', half: 'warm', since: after(16) })
+    const running = { kind: 'running', half: 'warm', begunAt: after(17), begunBy: 'you', hours: 1 }
+    expect(state([ended, begun], after(18))).toMatchObject(running)
+  })
+
+  it('a device whose clock is ahead presses nothing in the future', () => {
+    const held = { ...half, id: 'c', press: 'hold' as const, reason: 'weekend', claimedAt: after(30) }
+    expect(state([held], after(2))).toMatchObject({ hold: { since: after(2), reason: 'weekend', by: 'you' } })
+  })
+
+  it('an end without a beginning changes nothing', () => {
+    const ended = { ...half, half: 'warm' as const, id: 'd', press: 'end' as const, claimedAt: after(3) }
+    expect(state([ended], after(4))).toMatchObject({ kind: 'running', half: 'cold' })
   })
 })

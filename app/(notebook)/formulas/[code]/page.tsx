@@ -37,7 +37,6 @@ export default async function FormulaPage({ params, searchParams }: Props) {
         code={code}
         number={version}
         part={parts.find((part) => part === query['part']) ?? 'lines'}
-        personId={actor.personId}
         mayWrite={may(actor, 'formula.write')}
       />
     </SWRConfig>
