@@ -87,6 +87,7 @@ export function BenchDay({ bench, person, outbox, isReady, onOpen, onChange }: P
               now={now}
               day={bench.today}
               zone={bench.zone}
+              mayLogTemperature={person.mayLogTemperature}
             />
           ))}
         </ol>
@@ -99,12 +100,17 @@ export function BenchDay({ bench, person, outbox, isReady, onOpen, onChange }: P
         <button
           type="button"
           data-kind="primary"
-          className="btn min-w-0 flex-1"
+          className="btn min-w-0 flex-1 max-sm:px-3"
           onClick={() => setFinding('scanning')}
         >
           <ScanMark /> Scan a label
         </button>
-        <button type="button" data-kind="secondary" className="btn" onClick={() => setFinding('typing')}>
+        <button
+          type="button"
+          data-kind="secondary"
+          className="btn max-sm:px-3"
+          onClick={() => setFinding('typing')}
+        >
           Type a code
         </button>
       </div>

@@ -64,7 +64,7 @@ export function ByInstrument({ bench, person, outbox, called, onCalled, onOpen, 
       <div
         role="tablist"
         aria-label="Which instrument"
-        className="mt-3 flex gap-3 overflow-x-auto px-4 sm:px-5"
+        className="mt-3 flex gap-3 overflow-x-auto px-4 sm:flex-wrap sm:px-5"
       >
         {steps.map((one) => (
           <button

@@ -34,6 +34,7 @@ export function FieldPanel({ jar, entry, hasNextJar }: Props) {
   const kind = here?.slot.kind
   const hasPad = here !== undefined && kind !== 'word' && !hasOwnPanel(here.slot)
   const read = (key: string) => entry.draft.texts[key] ?? ''
+  const keys = useTypedAbove(entry.at)
   return (
     <div className="min-w-0 flex-1 bg-typed px-4 pt-3 sm:px-7">
       <ErrorNote error={entry.error} />
@@ -70,7 +71,10 @@ export function FieldPanel({ jar, entry, hasNextJar }: Props) {
             ) : null}
           </Landing>
         )}
-        <div className="sticky bottom-0 -mx-4 self-end bg-typed px-4 pb-3 pt-2 sm:mx-0 sm:px-0 sm:col-start-2 [@media(max-height:640px)]:static">
+        <div
+          ref={keys}
+          className="sticky bottom-0 -mx-4 self-end bg-typed px-4 pb-3 pt-2 sm:mx-0 sm:px-0 sm:col-start-2 [@media(max-height:640px)]:static"
+        >
           {here && hasPad ? (
             <NumberPad
               hasMinus={here.slot.field.possible.lower < 0 && kind === 'number'}
@@ -96,4 +100,16 @@ function Landing({ isWide, children }: { isWide: boolean; children: ReactNode })
       {children}
     </div>
   )
+}
+
+/** On a phone the keys dock over what is typed where much stands above it: then the page moves on to the number. */
+function useTypedAbove(at: string) {
+  const keys = useRef<HTMLDivElement>(null)
+  useEffect(() => {
+    const typed = document.getElementById('typed')?.getBoundingClientRect()
+    const docked = keys.current?.getBoundingClientRect()
+    if (!typed || !docked || docked.left > typed.left || docked.top >= typed.bottom) return
+    window.scrollBy(0, typed.bottom + 8 - docked.top)
+  }, [at])
+  return keys
 }

@@ -66,7 +66,9 @@ function HandOverDialog({ bench, now, onChange, onClose }: Props & { onClose: ()
         },
       })
       forget()
-      toast(how === 'sent' ? 'The note stands on the Bench.' : 'The note is kept on this tablet.')
+      toast(how === 'sent' ? 'The note stands on the Bench.' : 'The note is kept on this tablet.', {
+        density: 'bench',
+      })
       onChange()
       onClose()
     } catch (refused) {

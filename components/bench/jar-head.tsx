@@ -2,6 +2,7 @@ import { Tray } from '@/components/device/tray'
 import type { OutboxOnScreen } from '@/components/device/use-outbox'
 import { LightSwitch } from '@/components/bench/light-switch'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
+import { capital } from '@/lib/study/rules/words'
 
 export function JarHead({
   jar,
@@ -37,8 +38,4 @@ export function JarHead({
       <LightSwitch className="max-sm:[&>:last-child]:hidden" />
     </header>
   )
-}
-
-function capital(text: string): string {
-  return text.charAt(0).toUpperCase() + text.slice(1)
 }

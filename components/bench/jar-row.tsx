@@ -59,7 +59,7 @@ export function JarRow({
             <span className="block font-650">takes the place of {jar.standsInFor}</span>
           ) : null}
           {jar.standsAs ? <span className="block font-650">{jar.standsAs}</span> : null}
-          <span className="block truncate text-soft">
+          <span className="block text-soft sm:truncate">
             {isOpen && (jar.openedBy || jar.read.length > 0)
               ? openText(jar)
               : jar.state === 'missed'

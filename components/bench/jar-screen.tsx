@@ -2,6 +2,7 @@
 
 import useSWR from 'swr'
 import type { BenchPerson } from '@/components/device/last-person'
+import { notACode, notOnDevice } from '@/components/bench/use-called-jar'
 import { OpenJar } from '@/components/bench/open-jar'
 import type { OutboxOnScreen } from '@/components/device/use-outbox'
 import { Button } from '@/components/ui/button'
@@ -9,7 +10,8 @@ import { ErrorNote } from '@/components/ui/error-note'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 import type { Bench } from '@/lib/bench/queries/today'
 import { benchKeys } from '@/lib/bench/keys'
-import { fetcher } from '@/lib/http/fetcher'
+import { ClientError, fetcher } from '@/lib/http/fetcher'
+import { readJarCode } from '@/lib/jar/rules/code'
 
 export type JarScreenProps = {
   code: string
@@ -27,7 +29,11 @@ export function JarScreen({ code, onChange, ...rest }: JarScreenProps) {
   if (!jar)
     return (
       <div className="mx-auto flex max-w-[820px] flex-col gap-5 p-5">
-        {unread ? <ErrorNote error={unread} /> : <p role="status">The jar is being looked up.</p>}
+        {unread ? (
+          <ErrorNote error={saidOf(unread, code)} />
+        ) : (
+          <p role="status">The jar is being looked up.</p>
+        )}
         <Button density="bench" onClick={rest.onWalk}>
           Back to the walk
         </Button>
@@ -44,4 +50,10 @@ export function JarScreen({ code, onChange, ...rest }: JarScreenProps) {
       }}
     />
   )
+}
+
+/** Without network a jar is known where the days that this device keeps ask for it. */
+function saidOf(unread: unknown, code: string): unknown {
+  if (!(unread instanceof ClientError) || unread.status !== 0) return unread
+  return readJarCode(code) ? notOnDevice(code) : notACode
 }

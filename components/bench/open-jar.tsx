@@ -48,7 +48,7 @@ export function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }
     <div className="mx-auto flex min-h-dvh max-w-[1440px] flex-col">
       <JarHead jar={jar} outbox={outbox} onWalk={onWalk} />
       <div className="beside:hidden">
-        <WalkStrip bench={bench} code={jar.code} />
+        <WalkStrip bench={bench} code={jar.code} onOpen={onOpen} />
       </div>
       <StationLine
         jar={jar}

@@ -10,7 +10,7 @@ export function SlotTabs({ entry, hasPhotos }: { entry: JarEntry; hasPhotos: boo
     <div
       role="tablist"
       aria-label="What is measured"
-      className="mt-2 flex min-w-0 gap-3 overflow-x-auto px-4 sm:px-5"
+      className="mt-2 flex min-w-0 gap-3 overflow-x-auto px-4 sm:px-5 beside:gap-2 beside:px-3"
     >
       {groups.map((group) => (
         <Tab
@@ -71,8 +71,8 @@ function Tab({ label, text, isHere, mark, onPick }: TabProps) {
       onClick={onPick}
       className={
         isHere
-          ? 'min-h-[74px] min-w-[116px] shrink-0 grow border-t-[5px] border-ink bg-typed px-3 pb-2 text-left'
-          : 'mb-2.5 min-h-16 min-w-[116px] shrink-0 grow rounded border-2 border-rule bg-paper px-3 py-1 text-left'
+          ? 'min-h-[74px] min-w-[112px] shrink-0 grow border-t-[5px] border-ink bg-typed px-3 pb-2 text-left'
+          : 'mb-2.5 min-h-16 min-w-[112px] shrink-0 grow rounded border-2 border-rule bg-paper px-3 py-1 text-left'
       }
     >
       <span className="flex items-center justify-between gap-2">
@@ -85,7 +85,9 @@ function Tab({ label, text, isHere, mark, onPick }: TabProps) {
         {mark === 'out' ? <span className="font-700 text-alarm">out</span> : null}
         {mark === 'wrong' ? <span className="font-700 text-alarm">no</span> : null}
       </span>
-      <span className={`block truncate text-17 ${text === 'not yet' || text === 'none' ? 'text-soft' : ''}`}>
+      <span
+        className={`block w-0 min-w-full truncate text-17 ${text === 'not yet' || text === 'none' ? 'text-soft' : ''}`}
+      >
         {text}
       </span>
     </button>

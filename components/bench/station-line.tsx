@@ -1,6 +1,7 @@
 import { PaperButton, type usePaper } from '@/components/bench/paper-switch'
 import { LargeCaution, useCaution } from '@/components/bench/station-caution'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
+import { capital } from '@/lib/study/rules/words'
 
 type Props = {
   jar: BenchJarPage
@@ -22,7 +23,7 @@ export function StationLine({ jar, paper, onMiss }: Props) {
       ) : null}
       <div className="order-last flex flex-wrap items-center justify-between gap-x-3 px-4 py-1 text-17 sm:order-none sm:px-7">
         <p>
-          {name}
+          {capital(name)}
           {temperatureC === null ? '' : `, ${temperatureC} °C`}. {caution && !isNew ? <b>{caution}</b> : null}
           {isNew ? <b className="hidden text-22 leading-tight sm:inline">{caution}</b> : null}
         </p>

@@ -6,6 +6,11 @@ import { benchKeys } from '@/lib/bench/keys'
 import { ClientError, fetcher } from '@/lib/http/fetcher'
 import { readJarCode } from '@/lib/jar/rules/code'
 
+export const notACode =
+  'That is no jar’s code: five signs, the last one checks the others. Read the label again.'
+export const notOnDevice = (code: string) =>
+  `Jar ${code} is not among the jars on this device, and without network nothing more is known of it.`
+
 /** A jar that is called up by its code; one that is not asked for says which it is and where it belongs. */
 export function useCalledJar(bench: Bench, onOpen: (code: string) => void) {
   const [error, setError] = useState<string | undefined>()
@@ -14,7 +19,7 @@ export function useCalledJar(bench: Bench, onOpen: (code: string) => void) {
   async function call(given: string) {
     const code = readJarCode(given)
     if (!code) {
-      setError('That is no jar’s code: five signs, the last one checks the others. Read the label again.')
+      setError(notACode)
       return
     }
     setError(undefined)
@@ -24,11 +29,7 @@ export function useCalledJar(bench: Bench, onOpen: (code: string) => void) {
       await fetcher(benchKeys.jar(code))
       onOpen(code)
     } catch (refused) {
-      setError(
-        refused instanceof ClientError && refused.status !== 0
-          ? refused.sentence
-          : `Jar ${code} is not on today’s walk, and without network nothing more is known of it.`,
-      )
+      setError(refused instanceof ClientError && refused.status !== 0 ? refused.sentence : notOnDevice(code))
     } finally {
       setBusy(false)
     }

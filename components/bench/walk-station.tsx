@@ -6,6 +6,7 @@ import { CycleAlarm, StationActs } from '@/components/station/station-acts'
 import { StationLabel } from '@/components/ui/station-label'
 import type { BenchStation } from '@/lib/bench/queries/today'
 import { dayText } from '@/lib/report/rules'
+import { capital } from '@/lib/study/rules/words'
 import { periodText } from '@/lib/station/rules/downtime'
 
 type StationProps = {
@@ -17,10 +18,21 @@ type StationProps = {
   now: number
   day: string
   zone: string
+  mayLogTemperature: boolean
 }
 
 /** One place of the walk: its jars on its line, and unfolded each with what is asked of it. */
-export function WalkStation({ station, isOpen, kept, onPick, onOpen, now, day, zone }: StationProps) {
+export function WalkStation({
+  station,
+  isOpen,
+  kept,
+  onPick,
+  onOpen,
+  now,
+  day,
+  zone,
+  mayLogTemperature,
+}: StationProps) {
   const celsius = station.kind === 'freeze-thaw' ? null : station.temperatureC
   const line = heatLine(celsius ?? station.cycleLowC ?? -10)
   const open = station.jars.filter((j) => j.state === 'due' || j.state === 'resting')
@@ -82,7 +94,7 @@ export function WalkStation({ station, isOpen, kept, onPick, onOpen, now, day, z
               Out of use {periodText(station.downtime)}: {station.downtime.reason}
             </p>
           ) : null}
-          <StationActs station={station} />
+          <StationActs station={station} mayLogTemperature={mayLogTemperature} />
           <ul className="flex flex-col gap-3">
             {[...open, ...station.jars.filter((j) => !open.includes(j))].map((jar) => (
               <JarRow
@@ -106,9 +118,13 @@ function StationCaution({ station: { id, name, caution }, day }: Pick<StationPro
   return (
     <>
       <p className="py-2 text-17">
-        {name}. {caution && !isNew ? <b>{caution}</b> : null}
+        {capital(name)}. {caution && !isNew ? <b>{caution}</b> : null}
       </p>
-      {isNew ? <LargeCaution caution={caution} onRead={noteRead} /> : null}
+      {isNew ? (
+        <div className="mb-3">
+          <LargeCaution caution={caution} onRead={noteRead} />
+        </div>
+      ) : null}
     </>
   )
 }

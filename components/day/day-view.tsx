@@ -6,7 +6,7 @@ import { Section } from '@/components/ui/section'
 import type { DayOnRecord } from '@/lib/day/queries/day'
 import { photoKeys } from '@/lib/photo/keys'
 import { dayText } from '@/lib/report/rules'
-import { counted, listed } from '@/lib/study/rules/words'
+import { capital, counted, listed } from '@/lib/study/rules/words'
 
 /** One day as QA reads it: each jar's entries with doubts and corrections, photos, what was not read, and the reviews. */
 export function DayView({ day, mayReview }: { day: DayOnRecord; mayReview: boolean }) {
@@ -22,14 +22,14 @@ export function DayView({ day, mayReview }: { day: DayOnRecord; mayReview: boole
         crumb={<Link href="/days">All days</Link>}
         headline={
           <>
-            <b>{counted(jars.length, 'jar')}</b> read on {dayText(day.day)}
+            <b>{capital(counted(jars.length, 'jar'))}</b> read on {dayText(day.day)}
             {unseen.size === 0 && reviews.length > 0 ? ', reviewed' : ''}
           </>
         }
         sentence={
           readings.length === 0 && mishaps.length === 0
             ? 'Nothing was entered on this day.'
-            : `${counted(readings.length, 'entry', 'entries')} by ${listed(by)}; ${doubted} in doubt, ${changed} corrected or void, ${mishaps.length} noted besides.`
+            : `${capital(counted(readings.length, 'entry', 'entries'))} by ${listed(by)}; ${doubted} in doubt, ${changed} corrected or void, ${mishaps.length} noted besides.`
         }
       />
       <ul className="mt-4">
@@ -42,8 +42,8 @@ export function DayView({ day, mayReview }: { day: DayOnRecord; mayReview: boole
       </ul>
       {isAfter && unseen.size > 0 ? (
         <p className="mt-3 border-l-[5px] border-ink pl-3">
-          <b>{counted(unseen.size, 'entry', 'entries')} came after the review.</b> They are marked below and
-          ask for another look.
+          <b>{capital(counted(unseen.size, 'entry', 'entries'))} came after the review.</b> They are marked
+          below and ask for another look.
         </p>
       ) : null}
       {mayReview && unseen.size > 0 ? (
@@ -54,8 +54,9 @@ export function DayView({ day, mayReview }: { day: DayOnRecord; mayReview: boole
           <ul>
             {mishaps.map((one) => (
               <li key={one.id} className="border-b border-hair py-1.5">
-                <b className="font-mono">{one.code}</b> of {one.studyCode}: {one.kind}, {one.reason} ({one.by}
-                ){isAfter && unseen.has(one.id) ? <b> after the review</b> : null}
+                <b className="font-mono">{one.code}</b> of {one.studyCode}:{' '}
+                {one.reason.toLowerCase() === one.kind ? one.kind : `${one.kind}, ${one.reason}`} ({one.by})
+                {isAfter && unseen.has(one.id) ? <b> after the review</b> : null}
               </li>
             ))}
           </ul>

@@ -4,7 +4,13 @@ import { useEffect } from 'react'
 import { useDevice } from './device-context'
 import type { Store } from './store'
 
-export type BenchPerson = { personId: string; initials: string; mayLog: boolean; mayAddPhotos: boolean }
+export type BenchPerson = {
+  personId: string
+  initials: string
+  mayLog: boolean
+  mayAddPhotos: boolean
+  mayLogTemperature: boolean
+}
 
 /** Who was signed in last on this device; nothing more of a person is told outside of their own store. */
 type LastPerson = { personId: string; initials: string }
@@ -31,12 +37,13 @@ export function lastPerson(): LastPerson | null {
 }
 
 /** What this person may do at the Bench, for when no server can say it. */
-export function useRememberPerson({ personId, initials, mayLog, mayAddPhotos }: BenchPerson): void {
+export function useRememberPerson(person: BenchPerson): void {
+  const { personId, initials, mayLog, mayAddPhotos, mayLogTemperature } = person
   const device = useDevice()
   useEffect(() => {
-    const data: BenchPerson = { personId, initials, mayLog, mayAddPhotos }
+    const data: BenchPerson = { personId, initials, mayLog, mayAddPhotos, mayLogTemperature }
     void device?.store.keepData('person', { readAt: '', data }).catch(() => undefined)
-  }, [device, personId, initials, mayLog, mayAddPhotos])
+  }, [device, personId, initials, mayLog, mayAddPhotos, mayLogTemperature])
 }
 
 export async function findPerson(store: Store): Promise<BenchPerson | null> {

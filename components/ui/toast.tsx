@@ -40,12 +40,16 @@ export function Toasts() {
     () => toasts,
     () => none,
   )
+  const isBench = shown.at(-1)?.density === 'bench'
   return (
     <div
       role="status"
       aria-live="polite"
       data-screen-only
-      className="pointer-events-none fixed bottom-4 left-4 z-50 flex max-w-[calc(100vw-32px)] flex-col gap-2 sm:left-10"
+      className={`pointer-events-none fixed left-4 z-50 flex max-w-[calc(100vw-32px)] flex-col gap-2 ${
+        // At the Bench the thumb's keys are at the foot of the page, and nothing is pressed on what is said.
+        isBench ? 'top-3 sm:left-5' : 'bottom-4 sm:left-10'
+      }`}
     >
       {shown.map((one) => (
         <ToastLine key={one.id} one={one} />
@@ -62,8 +66,10 @@ function ToastLine({ one }: { one: Toast }) {
   }, [one.id, isBench])
   return (
     <div
-      className={`pointer-events-auto flex items-center gap-3.5 rounded shadow-float ${one.isAlarm ? 'bg-alarm' : 'bg-ink'} text-onink ${
-        isBench ? 'min-h-[72px] px-[22px] text-20' : 'min-h-[44px] min-w-[300px] px-4 py-2 text-15'
+      className={`flex items-center gap-3.5 rounded shadow-float ${one.isAlarm ? 'bg-alarm' : 'bg-ink'} text-onink ${
+        isBench
+          ? 'min-h-[72px] px-[22px] text-20'
+          : 'pointer-events-auto min-h-[44px] min-w-[300px] px-4 py-2 text-15'
       }`}
     >
       {isBench ? <KeptJar /> : null}

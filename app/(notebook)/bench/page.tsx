@@ -20,6 +20,7 @@ export default async function BenchPage() {
           initials: actor.initials,
           mayLog: may(actor, 'reading.log'),
           mayAddPhotos: may(actor, 'photo.add'),
+          mayLogTemperature: may(actor, 'station.log'),
         }}
       />
     </SWRConfig>

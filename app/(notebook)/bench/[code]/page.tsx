@@ -33,6 +33,7 @@ export default async function BenchJarPage({ params }: Props) {
           initials: actor.initials,
           mayLog: may(actor, 'reading.log'),
           mayAddPhotos: may(actor, 'photo.add'),
+          mayLogTemperature: may(actor, 'station.log'),
         }}
       />
     </SWRConfig>
