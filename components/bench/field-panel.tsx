@@ -106,10 +106,16 @@ function Landing({ isWide, children }: { isWide: boolean; children: ReactNode })
 function useTypedAbove(at: string) {
   const keys = useRef<HTMLDivElement>(null)
   useEffect(() => {
-    const typed = document.getElementById('typed')?.getBoundingClientRect()
-    const docked = keys.current?.getBoundingClientRect()
-    if (!typed || !docked || docked.left > typed.left || docked.top >= typed.bottom) return
-    window.scrollBy(0, typed.bottom + 8 - docked.top)
+    const goOn = () => {
+      const typed = document.getElementById('typed')?.getBoundingClientRect()
+      const docked = keys.current?.getBoundingClientRect()
+      if (!typed || !docked || docked.left > typed.left || docked.top >= typed.bottom) return
+      window.scrollBy(0, typed.bottom + 8 - docked.top)
+    }
+    // A caution or a notice above may come later than the field.
+    const grown = new ResizeObserver(goOn)
+    grown.observe(document.body)
+    return () => grown.disconnect()
   }, [at])
   return keys
 }

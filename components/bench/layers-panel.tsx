@@ -22,7 +22,7 @@ export function LayersPanel({ jar, entry }: { jar: BenchJarPage; entry: JarEntry
     return text === null ? null : Number(text)
   }
   return (
-    <div className="hidden items-center gap-x-4 gap-y-2 px-7 pt-3 sm:grid sm:grid-cols-[minmax(0,280px)_minmax(0,1fr)] beside:grid-cols-[210px_minmax(0,1fr)] sm:[grid-template-areas:'jar_top''jar_sep''jar_low']">
+    <div className="hidden items-center gap-x-4 gap-y-2 px-7 pt-3 sm:grid sm:grid-cols-[minmax(0,250px)_minmax(0,1fr)] beside:grid-cols-[190px_minmax(0,1fr)] sm:[grid-template-areas:'jar_top''jar_sep''jar_low']">
       <div className="[grid-area:jar]">
         <JarRuler
           fillMm={fill}

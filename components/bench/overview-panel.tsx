@@ -10,7 +10,7 @@ export function OverviewPanel({ jar, entry }: { jar: BenchJarPage; entry: JarEnt
   const { at } = entry
   const tabs = entry.groups.map((group) => group.find((tab) => tab.key === at) ?? group[0]!)
   return (
-    <div className="hidden gap-x-6 gap-y-3 px-7 pt-3 sm:grid sm:grid-cols-[140px_minmax(0,1fr)]">
+    <div className="hidden gap-x-6 gap-y-3 px-7 pt-3 sm:grid sm:grid-cols-[140px_minmax(0,1fr)] beside:grid-cols-[96px_minmax(0,1fr)] beside:gap-x-4">
       <div>
         <JarGlyph
           height={200}
@@ -29,11 +29,11 @@ export function OverviewPanel({ jar, entry }: { jar: BenchJarPage; entry: JarEnt
                 type="button"
                 onClick={() => entry.goTo(key)}
                 aria-pressed={key === at}
-                className="grid min-h-16 w-full grid-cols-[minmax(0,1fr)_120px_minmax(0,1.2fr)] items-center gap-x-4 py-2 text-left"
+                className="grid min-h-16 w-full grid-cols-[minmax(0,1fr)_120px_minmax(0,1.2fr)] items-center gap-x-4 py-2 beside:grid-cols-[minmax(0,1fr)_120px] text-left"
               >
                 <span className={key === at ? 'font-700' : ''}>
                   {slot.field.label}
-                  <span className="block whitespace-nowrap text-17 font-430 text-soft">
+                  <span className="block text-17 sm:whitespace-nowrap font-430 text-soft">
                     {bandText(slot.field)}
                   </span>
                 </span>
@@ -49,7 +49,7 @@ export function OverviewPanel({ jar, entry }: { jar: BenchJarPage; entry: JarEnt
                     />
                   )}
                 </span>
-                <LastValues field={slot.field} />
+                <LastValues field={slot.field} className="beside:col-span-2" />
               </button>
             </li>
           ))}

@@ -26,7 +26,7 @@ export function UsedWith({ jar, entry, slot }: Props) {
       </p>
     )
   return (
-    <div className="mb-1 flex flex-wrap gap-3">
+    <div className="mb-1 flex flex-wrap items-start gap-x-3">
       {instruments.length > 0 ? (
         <div className="flex gap-3" role="group" aria-label="Instrument">
           {instruments.map((one) => (
@@ -51,7 +51,7 @@ export function UsedWith({ jar, entry, slot }: Props) {
         <button
           type="button"
           onClick={() => setChanging(true)}
-          className="min-h-16 min-w-0 flex-1 rounded border-2 border-transparent text-left text-17 leading-tight text-soft underline decoration-dotted underline-offset-4"
+          className="min-h-16 min-w-0 flex-1 basis-44 rounded border-2 border-transparent text-left text-17 leading-tight text-soft underline decoration-dotted underline-offset-4"
         >
           {conditionWords(used) || slot.field.method || 'Conditions'}
           {entry.isChanged(slot) ? <b className="text-ink">, not as at the start</b> : ': as at the start'}

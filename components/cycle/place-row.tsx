@@ -88,7 +88,7 @@ export function PlaceRow({ place, now, zone, mayLog, presses }: Props) {
           )}
           {kept.length > 0 ? (
             <span className="block font-650">
-              {counted(kept.length, 'press', 'presses')} kept on this device, not sent yet.
+              {capital(counted(kept.length, 'press', 'presses'))} kept on this device, not sent yet.
             </span>
           ) : null}
         </p>

@@ -89,7 +89,7 @@ function BenchShell({ who, places, isWhole, children }: Props & { isWhole: boole
       {isWhole ? null : (
         <header
           data-screen-only
-          className="flex h-16 items-end justify-between gap-6 border-b border-ink px-4 sm:px-5"
+          className="flex h-16 items-end justify-between gap-3 border-b border-ink px-4 sm:px-5"
         >
           <Link
             href="/bench"
@@ -99,7 +99,7 @@ function BenchShell({ who, places, isWhole, children }: Props & { isWhole: boole
             <Logo />
             <span className="pb-[5px] text-19 font-720">Bench</span>
           </Link>
-          <span className="flex h-16 items-end gap-6">
+          <span className="flex h-16 items-end gap-4 sm:gap-6">
             {desk ? (
               <Link
                 href={desk.href}

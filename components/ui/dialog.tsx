@@ -34,7 +34,7 @@ export function Dialog({ isOpen, onClose, title, sentence, density, children, ac
           {sentence ? <p className={`mt-2 ${isBench ? 'text-18' : 'text-15'}`}>{sentence}</p> : null}
           {children ? <div className="mt-3.5 flex flex-col gap-3.5">{children}</div> : null}
           {acts ? (
-            <div className="mt-4 flex flex-wrap justify-end gap-[var(--control-gap)]">{acts}</div>
+            <div className="mt-4 flex flex-wrap items-start justify-end gap-[var(--control-gap)]">{acts}</div>
           ) : null}
         </Radix.Content>
       </Radix.Portal>

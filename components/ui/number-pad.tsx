@@ -2,33 +2,36 @@
 
 type Props = {
   onKey: (key: string) => void
-  /** Where a value may lie below zero, a key of its own stands beside what is under the keys. */
+  /** Where a value may lie below zero, a key of its own: beside what is under the keys, else in their last row. */
   hasMinus?: boolean
   /** What stands under the keys, such as the button that keeps the entry. */
   children?: React.ReactNode
 }
 
-const keys = ['7', '8', '9', '4', '5', '6', '1', '2', '3', '.', '0', 'back'] as const
+const digits = ['7', '8', '9', '4', '5', '6', '1', '2', '3'] as const
+const keys = [...digits, '.', '0', 'back'] as const
+const names: Record<string, string> = { back: 'Delete the last digit', '.': 'Decimal point', '-': 'Minus' }
 
 /** Keys for gloves: 64 px high, 12 apart. The field keeps the focus, so that a real keyboard works beside it. */
 export function NumberPad({ onKey, hasMinus = false, children }: Props) {
+  const isInRow = hasMinus && !children
   return (
     <div>
-      <div className="grid grid-cols-3 gap-3" role="group" aria-label="Number pad">
-        {keys.map((key) => (
+      <div className="grid grid-cols-12 gap-3" role="group" aria-label="Number pad">
+        {(isInRow ? [...digits, '-', ...keys.slice(-3)] : keys).map((key, at) => (
           <button
             key={key}
             type="button"
-            aria-label={key === 'back' ? 'Delete the last digit' : key === '.' ? 'Decimal point' : key}
+            aria-label={names[key] ?? key}
             onPointerDown={(event) => event.preventDefault()}
             onClick={() => onKey(key)}
-            className="flex h-16 items-center justify-center rounded border-2 border-rule bg-ground text-36 font-600 leading-none active:bg-recess"
+            className={`flex h-16 items-center justify-center rounded border-2 border-rule bg-ground text-36 font-600 leading-none active:bg-recess ${isInRow && at >= digits.length ? 'col-span-3' : 'col-span-4'}`}
           >
-            {key === 'back' ? <BackMark /> : key === '.' ? <span aria-hidden>•</span> : key}
+            {key === 'back' ? <BackMark /> : key === '-' ? <MinusMark /> : key === '.' ? <Point /> : key}
           </button>
         ))}
       </div>
-      {children || hasMinus ? (
+      {children ? (
         <div className="mt-3 flex gap-3">
           {hasMinus ? (
             <button
@@ -38,9 +41,7 @@ export function NumberPad({ onKey, hasMinus = false, children }: Props) {
               onClick={() => onKey('-')}
               className="flex min-h-16 w-[92px] shrink-0 items-center justify-center rounded border-2 border-rule bg-ground active:bg-recess"
             >
-              <svg viewBox="0 0 32 32" width="32" height="32" aria-hidden>
-                <path d="M4 16H28" stroke="currentColor" strokeWidth="4" />
-              </svg>
+              <MinusMark />
             </button>
           ) : null}
           <div className="min-w-0 flex-1">{children}</div>
@@ -56,6 +57,18 @@ export function afterKey(text: string, key: string): string {
   if (key === '-') return text.startsWith('-') ? text.slice(1) : `-${text}`
   if (key === '.') return /[.,]/.test(text) ? text : `${text || '0'}.`
   return text.length >= 12 ? text : text + key
+}
+
+function Point() {
+  return <span aria-hidden>•</span>
+}
+
+function MinusMark() {
+  return (
+    <svg viewBox="0 0 32 32" width="32" height="32" aria-hidden>
+      <path d="M4 16H28" stroke="currentColor" strokeWidth="4" />
+    </svg>
+  )
 }
 
 function BackMark() {
