@@ -3,7 +3,6 @@ import type { SheetFlag, SheetProps, SheetRow } from '@/components/charts/sheet-
 import type { StripAttribute } from '@/components/charts/cell-strip'
 import type { SheetPage, SheetShelf } from '@/lib/study/queries/sheet'
 import { inSentence } from '@/lib/study/rules/finding'
-import { counted } from '@/lib/study/rules/words'
 import { addDays, spokenDay } from '@/lib/study/rules/calendar'
 
 /** One batch's shelves as the chart draws them. */
@@ -65,9 +64,6 @@ function hasUnspentTime({ todayWeeks, study }: SheetPage): boolean {
   return todayWeeks !== null && todayWeeks / study.endWeeks < 0.7
 }
 
-/** Of jars that nothing was asked of when it happened. */
-const aloneWords: Record<string, string> = { 'wrong jar': 'opened by mistake' }
-
 function noteOf({ station }: SheetShelf): string {
   const cycle =
     station.isFreezeThaw && station.cycleLowC !== null && station.cycleHighC !== null
@@ -77,10 +73,7 @@ function noteOf({ station }: SheetShelf): string {
     station.meanC === null || cycle ? cycle : `mean ${station.meanC.toFixed(1).replace('-', '−')} °C`
   const ended = station.endedOn ? `ended ${spokenDay(station.endedOn, false)}` : null
   const name = station.name.charAt(0).toLowerCase() + station.name.slice(1)
-  const alone = new Map<string, number>()
-  for (const { kind } of station.mishaps) alone.set(kind, (alone.get(kind) ?? 0) + 1)
-  const jars = [...alone].map(([kind, count]) => `${counted(count, 'jar')} ${aloneWords[kind] ?? kind}`)
-  return [station.variant, name, mean, ended, ...jars].filter(Boolean).join(', ')
+  return [station.variant, name, mean, ended].filter(Boolean).join(', ')
 }
 
 /** A flag is planted where its reading stands. */

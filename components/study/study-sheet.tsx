@@ -81,12 +81,28 @@ export function StudySheet({
           />
         ) : null}
       </div>
+      <Happened shelves={shelves} />
       {shown && shelf && selected ? (
         <Strip sheet={sheet} batchId={shown.id} shelf={shelf} weeks={selected.weeks} />
       ) : null}
       <Amendments study={study} />
       <Moves study={study} />
     </>
+  )
+}
+
+/** What happened to jars that no pull asked for: a spare that broke on its shelf. */
+function Happened({ shelves }: { shelves: SheetShelf[] }) {
+  const all = shelves.flatMap(({ station }) => station.mishaps.map((one) => ({ one, station })))
+  if (all.length === 0) return null
+  return (
+    <ul aria-label="Jars outside a pull" className="mt-4 text-15">
+      {all.map(({ one, station }) => (
+        <li key={`${one.code}-${one.at}`}>
+          {station.name}: {mishapText(one, spokenDay(one.at.slice(0, 10), false))}
+        </li>
+      ))}
+    </ul>
   )
 }
 

@@ -258,7 +258,7 @@ describe('moving jars', () => {
           version: asked.version,
           deviceNow: new Date().toISOString(),
           claimedAt: new Date().toISOString(),
-          leaveOut: ['viscosity', 'odour'],
+          leaveOut: ['viscosity', 'odour', 'feel'],
           readings: [{ id: newId(), attribute: 'ph', typed: '5,60', isConfirmed: true }],
         },
       })

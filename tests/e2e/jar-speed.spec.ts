@@ -114,6 +114,9 @@ test('A measuring jar with pH and viscosity takes at most 6; its keys are in vie
   await count.enter()
   await count.digits(((await readLast(page, code, 'viscosity')) / 100).toFixed(1))
   await count.enter()
+  // Odour, then feel.
+  await count.press(page.getByRole('button', { name: /^Same as last: / }))
+  await expect(page.getByRole('tab', { name: /^Feel/ })).toHaveAttribute('aria-selected', 'true')
   await count.press(page.getByRole('button', { name: /^Same as last: / }))
   await page.evaluate(() => document.documentElement.setAttribute('data-theme', 'dim'))
   expect((await new AxeBuilder({ page }).analyze()).violations).toEqual([])

@@ -19,7 +19,7 @@ describe('where grams can be saved', () => {
     expect(savings.length).toBeGreaterThanOrEqual(6)
     const grams = savings.map((saving) => saving.grams)
     expect(grams).toEqual(grams.toSorted((a, b) => b - a))
-    const cold = at(savings, /^pH, viscosity and odour at every second time point at 5 °C$/)
+    const cold = at(savings, /^pH, viscosity, odour and feel at every second time point at 5 °C$/)
     // Of 1, 2, 3, 4, 5, 6, 8, 10, 12 the pulls of 2, 4, 6 and 10: four jars of 30 g, 3 % lost.
     expect(cold.jars).toBe(4)
     expect(cold.grams).toBeCloseTo((4 * 30) / 0.97, 6)

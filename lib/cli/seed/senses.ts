@@ -12,8 +12,6 @@ export function sensed(
   // Twice as fast for each ten degrees, of the time that a drift at 45 °C takes.
   const heat = 2 ** (((place.temperatureC ?? 25) - 45) / 10) * (weeks / 6)
   switch (attribute) {
-    case 'feel':
-      return { typed: 'as the initial', detail: { word: 'as the initial' } }
     case 'type':
       return { typed: 'water outside', detail: { typeMethod: 'dilution' } }
     case 'colour': {

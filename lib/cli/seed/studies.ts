@@ -33,7 +33,8 @@ const quarters = [13, 26, 39, 52, 78, 104]
 export async function fillProtocols(filling: Filling): Promise<Protocols> {
   const { liv, rune } = filling.people
   const at = daysAgo(filling, 797, 10)
-  const make = async (name: string, plan: ProtocolPlan) => {
+  const make = async (name: string, asked: ProtocolPlan) => {
+    const plan = asClientsAsk(asked)
     const versionId = newId()
     const { code } = await filling.act(liv, at, (trx) =>
       createProtocol(trx, liv, newProtocol.parse({ id: newId(), versionId, name, plan })),
@@ -166,6 +167,16 @@ function initialOf(
         return { ...base, typed: ['as the initial'], detail: { word: 'as the initial' } }
     }
   })
+}
+
+/** The demo's clients hold their creams to 2 %, narrower than a ready-made protocol begins with. */
+function asClientsAsk(plan: ProtocolPlan): ProtocolPlan {
+  const attributes = plan.attributes.map((planned) =>
+    planned.attribute === 'separation'
+      ? { ...planned, tolerance: { kind: 'range' as const, upper: 2 } }
+      : planned,
+  )
+  return { ...plan, attributes }
 }
 
 /** Six weeks on what a hand and an eye notice first, with one attribute that only this protocol has. */

@@ -136,9 +136,11 @@ function entriesOf(
           }
         }
         case 'look':
+        case 'feel':
         case 'odour': {
           const word = percent > 4 ? 'changed' : percent > 1.5 ? 'slightly changed' : 'as the initial'
-          const kept = planned.attribute === 'odour' ? 'as the initial' : word
+          const felt = percent > 4 ? 'slightly changed' : 'as the initial'
+          const kept = { look: word, feel: felt, odour: 'as the initial' }[planned.attribute]
           return { ...base, typed: kept, detail: { word: kept } }
         }
         default:

@@ -6,7 +6,7 @@ type Begun = Partial<Omit<PlannedAttribute, 'attribute'>> & Pick<PlannedAttribut
 
 /** Where a new attribute of a plan begins; all of it is there to be edited [practice, no source]. */
 const begun: Record<KnownKey, Begun> = {
-  separation: { tolerance: { kind: 'range', upper: 2 }, method: 'ruler against the closed jar' },
+  separation: { tolerance: { kind: 'range', upper: 5 }, method: 'ruler against the closed jar' },
   look: { tolerance: { kind: 'range', upper: 1 }, method: 'against the jar kept at 5 °C' },
   odour: { tolerance: { kind: 'range', upper: 1 }, method: 'against the jar kept at 5 °C' },
   feel: { tolerance: { kind: 'range', upper: 1 }, method: 'on the back of the hand, against the initial' },

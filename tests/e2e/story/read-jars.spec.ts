@@ -68,8 +68,10 @@ test('The story, technician: R08, R11: a measuring jar takes its numbers, refuse
   await typed.fill(((await readLast(page, code, 'viscosity')) / 1000).toFixed(1))
   await expect(page.getByText(/^\d+.\d{3} mPa·s$/).first()).toBeVisible()
   await page.getByRole('group', { name: 'Instrument' }).getByRole('button', { name: /^V1/ }).tap()
-  await pick(page, /^Odour/)
-  await page.getByRole('radio', { name: 'as the initial' }).tap()
+  for (const word of [/^Odour/, /^Feel/]) {
+    await pick(page, word)
+    await page.getByRole('radio', { name: 'as the initial' }).tap()
+  }
 
   watch.expectRefusal(/\/readings$/, 409)
   watch.expectRefusal(/\/readings$/, 422)
