@@ -14,7 +14,7 @@ export function JarHead({
   onWalk: () => void
 }) {
   return (
-    <header className="flex items-center gap-3 px-4 py-3 sm:gap-5 sm:px-5 sm:py-4">
+    <header className="flex items-center gap-3 max-sm:[&_[data-bracket]]:hidden px-4 py-3 sm:gap-5 sm:px-5 sm:py-4">
       <button
         type="button"
         aria-label="Back to the walk"
@@ -35,7 +35,8 @@ export function JarHead({
         {jar.standsAs ? <p className="text-17 font-650 sm:text-18">{capital(jar.standsAs)}</p> : null}
       </div>
       <Tray outbox={outbox} />
-      <LightSwitch className="max-sm:[&>:last-child]:hidden" />
+      {/* On a phone the jar’s code and what waits here come before the light. */}
+      <LightSwitch className="max-sm:peer-[.bg-ink]:hidden max-sm:[&>:last-child]:hidden" />
     </header>
   )
 }

@@ -51,7 +51,9 @@ export function CycleRemark({ stationId }: { stationId: string }) {
             ? `next at ${whenText(due, now, board.zone)}`
             : waiting > 0
               ? `${waiting} to begin`
-              : 'nothing runs'}
+              : board
+                ? 'nothing runs'
+                : ''}
       </span>
     </Link>
   )

@@ -50,7 +50,7 @@ export function DayView({ day, mayReview }: { day: DayOnRecord; mayReview: boole
         <ReviewForm day={day.day} entryIds={day.entryIds} isOwn={day.isOwn} />
       ) : null}
       {mishaps.length > 0 ? (
-        <Section title="Not as planned">
+        <Section title="Not as planned" className="mt-6">
           <ul>
             {mishaps.map((one) => (
               <li key={one.id} className="border-b border-hair py-1.5">
@@ -63,7 +63,7 @@ export function DayView({ day, mayReview }: { day: DayOnRecord; mayReview: boole
         </Section>
       ) : null}
       {jars.length > 0 ? (
-        <Section title="Entries">
+        <Section title="Entries" className="mt-6">
           {jars.map((jar) => (
             <DayJarPart
               key={jar.pullJarId}
@@ -75,7 +75,7 @@ export function DayView({ day, mayReview }: { day: DayOnRecord; mayReview: boole
         </Section>
       ) : null}
       {photos.length > 0 ? (
-        <Section title="Photos">
+        <Section title="Photos" className="mt-6">
           <ul className="flex flex-wrap gap-3">
             {photos.map((photo) => (
               <li key={photo.id} className="w-[140px]">

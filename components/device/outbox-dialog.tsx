@@ -61,7 +61,11 @@ function titleOf(count: number): string {
 
 function sentenceOf(isOnline: boolean, isSignedOut: boolean, count: number): string {
   if (count === 0) return 'Nothing waits here.'
-  if (isSignedOut) return 'You were signed out. They go out once you have signed in again.'
-  if (!isOnline) return 'They go out by themselves, once each and in this order, when the network is back.'
-  return 'They go out once each and in this order.'
+  const goes = count === 1 ? 'It goes out' : 'They go out'
+  if (isSignedOut) return `You were signed out. ${goes} once you have signed in again.`
+  if (!isOnline)
+    return count === 1
+      ? 'It goes out by itself, once, when the network is back.'
+      : 'They go out by themselves, once each and in this order, when the network is back.'
+  return count === 1 ? 'It goes out once.' : 'They go out once each and in this order.'
 }

@@ -31,10 +31,14 @@ export function Tray({ outbox }: { outbox: OutboxOnScreen }) {
         data-screen-only
         onClick={() => setOpen(true)}
         aria-label={`${head}. ${count}. Show what waits.`}
-        className="flex min-h-[66px] items-center gap-4 rounded bg-ink px-4 text-left text-onink"
+        className="peer flex min-h-16 items-center gap-4 rounded bg-ink px-4 text-left text-onink"
       >
         {items.length > 0 ? (
-          <span aria-hidden className="flex items-end gap-1 border-x-2 border-b-2 border-onink px-1.5 pb-1">
+          <span
+            data-bracket
+            aria-hidden
+            className="flex items-end gap-1 border-x-2 border-b-2 border-onink px-1.5 pb-1"
+          >
             {items.slice(0, 5).map((item) => (
               <span
                 key={item.id}
@@ -45,7 +49,10 @@ export function Tray({ outbox }: { outbox: OutboxOnScreen }) {
         ) : null}
         <span className="leading-tight" role="status">
           <b className="block text-18">{head}</b>
-          <span className="text-17">{count}</span>
+          <span className="text-17">
+            {count.replace(onTablet, '')}
+            {count.endsWith(onTablet) ? <span className="max-sm:hidden">{onTablet}</span> : null}
+          </span>
         </span>
       </button>
       {isOpen ? <OutboxDialog outbox={outbox} onClose={() => setOpen(false)} /> : null}
@@ -63,8 +70,11 @@ export function ShellTray() {
   )
 }
 
+/** Left out on a phone, where the place is short. */
+const onTablet = ' on this tablet'
+
 function countText(all: number, refused: number, asOf: string | null): string {
   if (refused > 0) return `${refused} to look at, ${all} kept here`
-  if (all > 0) return `${all} kept on this tablet`
+  if (all > 0) return `${all} kept${onTablet}`
   return asOf ? `as of ${clockTime(asOf)}` : 'nothing waits here'
 }

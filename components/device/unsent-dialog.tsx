@@ -15,11 +15,11 @@ export function UnsentDialog({ count, isLeaving, onLeave, onClose }: Props) {
       isOpen
       onClose={onClose}
       title={`${countWord(count, true)} ${count === 1 ? 'entry is' : 'entries are'} still only on this device`}
-      sentence="They stay here, shown to nobody but you, and go out when you sign in again on this device."
+      sentence={`${count === 1 ? 'It stays' : 'They stay'} here, shown to nobody but you, until you sign in again on this device.`}
       acts={
         <>
           <Button kind="danger" busy={isLeaving} onClick={onLeave}>
-            Sign out, leave them here
+            Sign out, leave {count === 1 ? 'it' : 'them'} here
           </Button>
           <Button
             kind="primary"
