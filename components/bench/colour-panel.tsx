@@ -1,18 +1,22 @@
-import { useState } from 'react'
+import { lazy, Suspense, useState } from 'react'
 import { besideKey } from '@/components/bench/kind-entry'
 import type { PanelProps } from '@/components/bench/kind-panel'
 import { PanelHead } from '@/components/bench/panel-head'
 import { FieldBand } from '@/components/bench/field-band'
+import { Button } from '@/components/ui/button'
 import { Checkbox } from '@/components/ui/checkbox'
 import { afterKey, NumberPad } from '@/components/ui/number-pad'
 import { labIn } from '@/lib/reading/rules/colour-value'
 import { readTyped } from '@/lib/reading/schema/typed'
 
+const ColourOnPhoto = lazy(() => import('@/components/photo/colour-on-photo'))
+
 const parts = ['L*', 'a*', 'b*'] as const
 const blank = '?'
 
 /** L*, a* and b* from the colorimeter, and how far that lies from the batch's own initial. */
-export function ColourPanel({ slot, text, verdict, read, type }: PanelProps) {
+export function ColourPanel({ jar, slot, text, verdict, read, type, onPhoto, markOnPhoto }: PanelProps) {
+  const [isPhoto, setPhoto] = useState(false)
   const [at, setAt] = useState(0)
   const typed = text.split(' ')
   const values = parts.map((_, index) => (typed[index] === blank ? '' : (typed[index] ?? '')))
@@ -56,6 +60,9 @@ export function ColourPanel({ slot, text, verdict, read, type }: PanelProps) {
           ) : null}
         </p>
         <FieldBand field={slot.field} now={verdict.state === 'value' ? verdict.value : null} width={440} />
+        <Button density="bench" onClick={() => setPhoto(true)}>
+          {onPhoto ? 'From a photo. Measure it again' : 'From a photo with a grey card'}
+        </Button>
         <Checkbox
           label="An estimate, from a photo or by eye"
           density="bench"
@@ -82,6 +89,20 @@ export function ColourPanel({ slot, text, verdict, read, type }: PanelProps) {
           </div>
         </NumberPad>
       </div>
+      <Suspense fallback={null}>
+        {isPhoto ? (
+          <ColourOnPhoto
+            jar={jar}
+            onUse={({ L, a, b }, photoColour) => {
+              type(slot.key, [L, a, b].map((part) => part.toFixed(1)).join(' '))
+              type(estimateKey, 'yes')
+              markOnPhoto(slot, { photoColour })
+              setPhoto(false)
+            }}
+            onClose={() => setPhoto(false)}
+          />
+        ) : null}
+      </Suspense>
     </div>
   )
 }

@@ -3,7 +3,6 @@ import { kindEntry, layersEntry } from '@/components/bench/kind-entry'
 import { newId } from '@/lib/db/id'
 import { conditionKeys, type Conditions } from '@/lib/reading/rules/conditions'
 import type { EntryDetail } from '@/lib/reading/schema/entry'
-import type { PhotoLinesOfReading } from '@/lib/reading/schema/photo-lines'
 import { readTyped } from '@/lib/reading/schema/typed'
 
 /** One input of the jar's screen. Layers have two; a replicate is an input of its own. */
@@ -14,6 +13,9 @@ export type Slot = {
   replicate: number
   part?: 'top' | 'bottom'
 }
+
+/** What of a reading's detail says where on a photo it was measured. */
+export type OnPhoto = Pick<EntryDetail, 'photoLines' | 'photoColour' | 'photoDrops'>
 
 export type Draft = {
   texts: Record<string, string>
@@ -26,8 +28,8 @@ export type Draft = {
   /** Attributes of which the value itself is typed instead of the torque. */
   direct: string[]
   note: string
-  /** Where the layers were measured on a photo; typed over, they are a ruler's again. */
-  photoLines?: PhotoLinesOfReading
+  /** By attribute and replicate, what was marked on a photo to measure it; typed over, it is not from a photo any more. */
+  onPhoto?: Record<string, OnPhoto>
   begunAt: string
   /** The field in hand, so that one comes back to it after signing in again. */
   at?: string
@@ -101,12 +103,9 @@ export function entriesOf(
     if (slot.kind === 'layer') {
       const read = layersEntry(slot.field.attribute, text, fillHeightMm)
       if (!read) return []
-      const { photoLines } = draft
-      const onPhoto = photoLines && {
-        typed: `${read.typed}, on the photo`,
-        detail: { ...read.detail, photoLines },
-      }
-      return [{ ...base, ...(onPhoto ?? read) }]
+      const onPhoto = draft.onPhoto?.[id]
+      if (!onPhoto) return [{ ...base, ...read }]
+      return [{ ...base, typed: `${read.typed}, on the photo`, detail: { ...read.detail, ...onPhoto } }]
     }
     const typed = text(slot.key)
     if (typed === '') return []
@@ -116,7 +115,13 @@ export function entriesOf(
       return [{ ...base, typed, detail: { torquePercent: value, ...conditionsUsed(slot, draft) } }]
     if (slot.kind === 'gross') return [{ ...base, typed, detail: { grossG: value } }]
     const read = kindEntry(slot, typed, text)
-    return [{ ...base, ...read, detail: { ...read.detail, ...conditionsUsed(slot, draft) } }]
+    return [
+      {
+        ...base,
+        ...read,
+        detail: { ...read.detail, ...conditionsUsed(slot, draft), ...draft.onPhoto?.[id] },
+      },
+    ]
   })
 }
 

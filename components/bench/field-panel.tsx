@@ -58,8 +58,10 @@ export function FieldPanel({ jar, entry, hasNextJar }: Props) {
             {kind === 'word' ? <WordPanel entry={entry} group={group} /> : null}
             {here && hasOwnPanel(here.slot) ? (
               <KindPanel
-                {...{ slot: here.slot, text: here.text, verdict: here.verdict, read }}
+                {...{ jar, slot: here.slot, text: here.text, verdict: here.verdict, read }}
                 type={entry.type}
+                markOnPhoto={entry.markOnPhoto}
+                onPhoto={entry.draft.onPhoto?.[`${here.slot.field.attribute}.${here.slot.replicate}`]}
               />
             ) : null}
             {entry.at === 'note' ? <NotePanel note={entry.draft.note} onNote={entry.note} /> : null}

@@ -1,8 +1,9 @@
 import { CentrifugePanel } from '@/components/bench/centrifuge-panel'
 import { ColourPanel } from '@/components/bench/colour-panel'
-import type { Slot } from '@/components/bench/draft'
+import type { OnPhoto, Slot } from '@/components/bench/draft'
 import { DropletsPanel } from '@/components/bench/droplets-panel'
 import { TypePanel } from '@/components/bench/type-panel'
+import type { BenchJarPage } from '@/lib/bench/queries/jar'
 import type { Verdict } from '@/components/bench/verdict'
 
 export type PanelProps = {
@@ -12,6 +13,10 @@ export type PanelProps = {
   /** Any text of the draft, also what is asked beside the field. */
   read: (key: string) => string
   type: (key: string, text: string) => void
+  jar: BenchJarPage
+  /** After typing: where on a photo it was measured. */
+  markOnPhoto: (slot: Slot, onPhoto: OnPhoto) => void
+  onPhoto: OnPhoto | undefined
 }
 
 const panels = {

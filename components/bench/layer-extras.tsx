@@ -7,7 +7,7 @@ import { plainRulerMm } from '@/lib/reading/rules/layers-value'
 const bleeds = ['0', '1', '2', '3', '4'] as const
 
 /** What no height says: a layer too thin for the ruler, bleed without a layer, and a cream layer apart from both. */
-export function LayerExtras({ slot, text, read, type }: Omit<PanelProps, 'verdict'>) {
+export function LayerExtras({ slot, text, read, type }: Pick<PanelProps, 'slot' | 'text' | 'read' | 'type'>) {
   const rulerMm = slot.field.planned.rulerMm ?? plainRulerMm
   const [bleedKey, creamKey] = [besideKey(slot, 'bleed'), besideKey(slot, 'cream')]
   return (

@@ -66,7 +66,9 @@ export function LayersPanel({ jar, entry }: { jar: BenchJarPage; entry: JarEntry
             onClick={() => entry.goTo('photo')}
             className="min-h-16 whitespace-nowrap text-17 underline underline-offset-4 beside:order-last"
           >
-            {entry.draft.photoLines ? 'Measured on the photo' : 'Measure on a photo'}
+            {entry.draft.onPhoto?.[`${slot.field.attribute}.1`]
+              ? 'Measured on the photo'
+              : 'Measure on a photo'}
           </button>
           {verdict?.state === 'value' ? (
             <p className={`flex items-end gap-3 text-24 font-650 sm:text-30 ${isOut ? 'text-alarm' : ''}`}>

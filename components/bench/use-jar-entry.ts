@@ -10,6 +10,7 @@ import {
   groupsOf,
   slotsOf,
   withIds,
+  type OnPhoto,
   type Draft,
   type Slot,
 } from '@/components/bench/draft'
@@ -47,6 +48,11 @@ export type JarEntry = ReturnType<typeof useJarEntry>
 export type FieldTab = { key: string; slot: Slot; text: string; verdict: Verdict }
 
 const isOpen = (draft: Draft, key: string) => (draft.texts[key] ?? '').trim() === ''
+
+const entryKey = ({ field, replicate }: Slot) => `${field.attribute}.${replicate}`
+
+const without = (all: Record<string, OnPhoto>, key: string) =>
+  Object.fromEntries(Object.entries(all).filter(([other]) => other !== key))
 
 /** A height on the ruler: to a tenth, within the fill. */
 const inFill = (mm: number, fillMm: number) =>
@@ -96,12 +102,12 @@ export function useJarEntry(options: Options) {
 
   function type(key: string, text: string) {
     const id = slots.find((s) => s.key === key)
-    setDraft(({ photoLines, ...d }) => ({
+    setDraft((d) => ({
       ...withIds(d, slots),
       texts: { ...d.texts, [key]: text },
       // A changed number is a new question.
       confirmed: d.confirmed.filter((c) => id === undefined || c !== `${id.field.attribute}.${id.replicate}`),
-      ...(photoLines && id?.kind !== 'layer' ? { photoLines } : {}),
+      ...(id && d.onPhoto ? { onPhoto: without(d.onPhoto, entryKey(id)) } : {}),
     }))
   }
 
@@ -114,8 +120,13 @@ export function useJarEntry(options: Options) {
     const mm = (percent: number) => ((percent / 100) * (jar.fillHeightMm ?? 0)).toFixed(1)
     type(top.key, mm(shares.topPercent))
     type(bottom.key, mm(shares.bottomPercent))
-    setDraft((d) => ({ ...d, photoLines }))
+    markOnPhoto(top, { photoLines })
     setAt(top.key)
+  }
+
+  /** Where on a photo the text that was just typed was measured. */
+  function markOnPhoto(slot: Slot, onPhoto: OnPhoto) {
+    setDraft((d) => ({ ...d, onPhoto: { ...d.onPhoto, [entryKey(slot)]: onPhoto } }))
   }
 
   function chooseInstrument(slot: Slot, id: string) {
@@ -243,7 +254,7 @@ export function useJarEntry(options: Options) {
       draft.instruments[`${slot.field.attribute}.${slot.replicate}`] ?? dayInstrument(jar, slot, chosen),
     goTo,
     note: (note: string) => setDraft((d) => ({ ...d, note })),
-    ...{ type, fill, measure, step, save, chooseInstrument, setConditions, heightOf, setHeight },
+    ...{ type, fill, measure, markOnPhoto, step, save, chooseInstrument, setConditions, heightOf, setHeight },
     stepHeight: (tab: FieldTab, by: number) => setHeight(tab, heightOf(tab) + by),
     /** Whether it is read under other conditions than the initial was. */
     isChanged: (slot: Slot) =>

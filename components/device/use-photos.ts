@@ -48,8 +48,7 @@ export function usePhotos({ url, fields, about, onSent }: Where) {
 
   /** `more` goes beside the file: a note, lines drawn on it. */
   const add = useCallback(
-    async (file: Blob, more: Record<string, string> = {}) => {
-      const id = newId()
+    async (file: Blob, more: Record<string, string> = {}, id = newId()) => {
       const claimedAt = new Date().toISOString()
       try {
         return await send<{ id: string }>({

@@ -10,6 +10,7 @@ import type { PhotoLinesOfReading } from '@/lib/reading/schema/photo-lines'
 import { separationOfLines, type PhotoLines } from '@/lib/science/photo-lines'
 import { DragPicture } from './drag-picture'
 import { firstLines, lineNames, lineOrder, moved, type Line } from './lines'
+import { Nudge } from './nudge'
 import { SureWords } from './sure-words'
 import { useMeasuring, type PhotoToMeasure } from './use-measuring'
 
@@ -143,18 +144,5 @@ export default function Measure({ jar, photo, onUse, onClose }: Props) {
         </div>
       </div>
     </Dialog>
-  )
-}
-
-function Nudge({ label, says, onPress }: { label: string; says: string; onPress: () => void }) {
-  return (
-    <button
-      type="button"
-      aria-label={says}
-      onClick={onPress}
-      className="min-h-16 rounded border-2 border-rule bg-paper text-18 active:bg-recess"
-    >
-      {label}
-    </button>
   )
 }

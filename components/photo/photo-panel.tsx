@@ -1,22 +1,19 @@
 'use client'
 
 import { lazy, Suspense, useRef, useState } from 'react'
-import useSWR from 'swr'
 import { PhotosOnTheirWay } from '@/components/device/photos-on-their-way'
-import { usePhotos } from '@/components/device/use-photos'
 import { Button } from '@/components/ui/button'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
-import { fetcher } from '@/lib/http/fetcher'
 import { photoKeys } from '@/lib/photo/keys'
 import type { PhotoLinesOfReading } from '@/lib/reading/schema/photo-lines'
 import { dayText } from '@/lib/report/rules'
+import { useJarPhotos } from './use-jar-photos'
 import type { PhotoToMeasure } from './use-measuring'
 
 // Loaded when somebody measures or opens the camera.
 const Measure = lazy(() => import('./measure'))
 const Camera = lazy(() => import('./camera'))
 
-type Photo = { id: string; takenAt: string; takenBy?: string; pullJarId: string | null }
 type Props = {
   jar: BenchJarPage
   /** Null where no separation is asked of this jar. */
@@ -25,21 +22,11 @@ type Props = {
 
 /** Photos of this jar: taken with the same framing each week or chosen as files; the original is kept byte for byte. */
 export function PhotoPanel({ jar, onMeasured }: Props) {
-  const { data: photos, mutate } = useSWR<Photo[]>(photoKeys.ofJar(jar.study.code, jar.code), fetcher)
+  const { add, onTheirWay, sent } = useJarPhotos(jar, 'jar')
   const [isCamera, setCamera] = useState(false)
   const [measuring, setMeasuring] = useState<PhotoToMeasure | null>(null)
   const files = useRef<HTMLInputElement>(null)
-  const { add, onTheirWay } = usePhotos({
-    url: photoKeys.add,
-    fields: { pullJarId: jar.pullJarId },
-    about: {
-      ...{ label: `Photo of jar ${jar.name}`, code: jar.code, pullJarId: jar.pullJarId },
-      href: `/bench/${jar.code}`,
-    },
-    onSent: () => mutate(),
-  })
-  const sent = (photos ?? []).toSorted((a, b) => b.takenAt.localeCompare(a.takenAt))
-  const before = sent.find((photo) => photo.pullJarId !== jar.pullJarId)
+  const before = sent.find((photo) => photo.pullJarId !== jar.pullJarId && photo.shows === 'jar')
 
   function choose(chosen: FileList | null) {
     for (const file of chosen ?? []) void add(file)

@@ -19,12 +19,12 @@ export type Proposing =
   /** None: the server is not reached, or makes nothing of it. */
   { state: 'waiting' | 'none' } | { state: 'there'; proposal: PhotoProposal }
 
-/** The copy to measure on, and what the server makes of it once it has it. By hand it works without the server too. */
-export function useMeasuring(photo: PhotoToMeasure) {
-  const [copy, setCopy] = useState<(MeasuringCopy & { url: string }) | null>(null)
-  const [proposing, setProposing] = useState<Proposing>({ state: 'waiting' })
+type Copy = MeasuringCopy & { url: string }
+
+/** The copy to measure on: the server's, or made here of the photo in hand. */
+export function useCopy({ id, file }: Pick<PhotoToMeasure, 'id' | 'file'>) {
+  const [copy, setCopy] = useState<Copy | null>(null)
   const [isUnreadable, setUnreadable] = useState(false)
-  const { id, file, isSent } = photo
 
   useEffect(() => {
     let isOver = false
@@ -34,6 +34,8 @@ export function useMeasuring(photo: PhotoToMeasure) {
       const made = kept
         ? await sizedCopy(kept)
         : await measuringCopy(file ?? (await reached(photoKeys.original(id))) ?? new Blob())
+      // Of a photo that went out without one: it came before copies did, or was sent while no page was open.
+      if (!kept && !file) await sendCopy(id, made.blob).catch(() => undefined)
       if (isOver) return
       url = URL.createObjectURL(made.blob)
       setCopy({ ...made, url })
@@ -44,6 +46,15 @@ export function useMeasuring(photo: PhotoToMeasure) {
       if (url) URL.revokeObjectURL(url)
     }
   }, [id, file])
+
+  return { copy, isUnreadable }
+}
+
+/** The copy to measure on, and what the server makes of it once it has it. By hand it works without the server too. */
+export function useMeasuring(photo: PhotoToMeasure) {
+  const { copy, isUnreadable } = useCopy(photo)
+  const [proposing, setProposing] = useState<Proposing>({ state: 'waiting' })
+  const { id, isSent } = photo
 
   useEffect(() => {
     if (!copy || !isSent) return
@@ -77,7 +88,6 @@ async function proposed(id: string, copy: Blob): Promise<PhotoProposal | null> {
   }
 }
 
-/** Of a photo that went out without one: it came before copies did, or was sent while no page was open. */
 async function sendCopy(id: string, copy: Blob): Promise<void> {
   const form = new FormData()
   form.append('file', copy, 'copy.jpg')

@@ -1,9 +1,11 @@
 import { mkdtemp, rm } from 'node:fs/promises'
 import { tmpdir } from 'node:os'
 import path from 'node:path'
+import { Jimp } from 'jimp'
 import { sql } from 'kysely'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { GET as document } from '@/app/api/outside-results/[id]/document/route'
+import { POST as addPhoto } from '@/app/api/photos/route'
 import { POST as log } from '@/app/api/pulls/[id]/readings/route'
 import { POST as makeProtocol } from '@/app/api/protocols/route'
 import { POST as correct } from '@/app/api/readings/[id]/correct/route'
@@ -209,6 +211,73 @@ describe('attributes at the jar', () => {
       .execute()
     expect(read.map((row) => row.doubts.map((doubt) => doubt.reason))).toEqual([[], ['conditions']])
     expect(read[1]!.doubts[0]!.sentence).toMatch(/^Measured with 60 s instead of 30 s;/)
+  })
+
+  it('a colour from a photo is what the server reads on the copy beside the grey card, marked as an estimate', async () => {
+    const jar = jarAt(jars, 5, 4)
+    // A card of 18 % grey, stored as 118, beside a sample of sRGB 180, 150, 120, under one light.
+    const image = new Jimp({ width: 200, height: 100, color: 0x767676ff })
+    for (let x = 100; x < 200; x += 1) for (let y = 0; y < 100; y += 1) image.setPixelColor(0xb49678ff, x, y)
+    const file = new Blob([new Uint8Array(await image.getBuffer('image/jpeg', { quality: 95 }))])
+    const photoId = newId()
+    const form = new FormData()
+    const now = new Date().toISOString()
+    const fields = { id: photoId, pullJarId: jar.pullJarId, shows: 'colour', deviceNow: now, claimedAt: now }
+    for (const [name, text] of Object.entries(fields)) form.set(name, text)
+    form.set('file', file, 'card.jpg')
+    form.set('copy', file, 'copy.jpg')
+    expect((await call(addPhoto, { cookie: technician.cookie, body: form })).status).toBe(200)
+
+    const patch = { mean: [0.5, 0.5, 0.5], pixels: 900, spread: 0, unevenness: 0, clipped: 0 }
+    const photoColour = {
+      ...{ photoId, width: 200, height: 100, greyL: 49.5, readBy: 'server' },
+      grey: { x: 50, y: 50, side: 30 },
+      sample: { x: 150, y: 50, side: 30 },
+      // Not what the photo shows: the server looks itself.
+      patches: { grey: patch, sample: patch },
+    }
+    const keep = (typed: string, detail: object) => {
+      const body = measured(study, jar)
+      const rest = plain.filter(([key]) => key !== 'colour').map(([key, text]) => entry(key, text))
+      const colour = { ...entry('colour', typed), detail: { photoColour: { ...photoColour, ...detail } } }
+      return call(log, {
+        cookie: technician.cookie,
+        params: { id: jar.pullJarId },
+        body: { ...body, readings: [...body.readings, ...rest, colour] },
+      })
+    }
+    // By hand from IEC 61966-2-1 and CIE 15: sRGB 180, 150, 120 is L* 64.1, a* 6.8, b* 20.0 under D65.
+    const other = await keep('50 0 0', {})
+    expect(other.status).toBe(422)
+    expect(other.body.error.sentence).toMatch(/do not say the same/)
+    expect((await keep('64.0 6.8 20.0', { width: 100 })).body.error.sentence).toMatch(/Measure anew/)
+    const black = await keep('64.0 6.8 20.0', { sample: { x: 198, y: 50, side: 30 } })
+    expect(black.body.error.sentence).toMatch(/leaves the photo/)
+    const kept = await keep('64.0 6.8 20.0', {})
+    expect(kept.body.error).toBeUndefined()
+    const row = await t.db
+      .selectFrom('reading')
+      .select(['value', 'typed'])
+      .select(sql<Record<string, unknown>>`detail`.as('detail'))
+      .where('pullJarId', '=', jar.pullJarId)
+      .where('attribute', '=', 'colour')
+      .executeTakeFirstOrThrow()
+    const {
+      lab,
+      isEstimate,
+      photoColour: onRecord,
+    } = row.detail as {
+      lab: { L: number; a: number; b: number }
+      isEstimate: boolean
+      photoColour: { readBy: string; patches: { grey: { mean: number[] } } }
+    }
+    expect(isEstimate).toBe(true)
+    expect(onRecord.readBy).toBe('server')
+    expect(onRecord.patches.grey.mean[0]).toBeCloseTo(0.18, 2)
+    expect(Math.abs(lab.L - 64.1)).toBeLessThan(0.6)
+    expect(Math.abs(lab.a - 6.8)).toBeLessThan(1)
+    expect(Math.abs(lab.b - 20)).toBeLessThan(1)
+    expect(row.value).toBeGreaterThan(30)
   })
 
   it('a turned emulsion is out at once, without a repeat', async () => {

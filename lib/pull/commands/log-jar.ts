@@ -1,7 +1,7 @@
 import type { Actor } from '@/lib/auth/actor'
 import type { Trx } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
-import { refusePhotosOfOthers } from '@/lib/photo/queries/of-jar'
+import { readOnPhotos } from '@/lib/photo/queries/of-jar'
 import { claimedInstant, paperInstant } from '@/lib/reading/rules/claimed-time'
 import type { JarToLog } from '@/lib/reading/schema/entry'
 import { lockStudyOfPullJar, recomputeSeries, type Recomputed } from '@/lib/series/commands'
@@ -37,6 +37,8 @@ export type LoggedJar = {
  * or nothing. Sent twice it keeps one; read by a second person it asks which one counts.
  */
 export async function logJar(trx: Trx, actor: Actor, input: JarToLog): Promise<LoggedJar> {
+  // Before the study is locked: pictures take their time.
+  const readings = await readOnPhotos(trx, input.pullJarId, input.readings)
   const studyId = await lockStudyOfPullJar(trx, input.pullJarId)
   const jar =
     studyId &&
@@ -50,8 +52,7 @@ export async function logJar(trx: Trx, actor: Actor, input: JarToLog): Promise<L
 
   refuseOver(jar)
   const onRecord = frame.readings.filter((row) => row.pullJarId === jar.id)
-  const entries = readEntries(jar, frame, input.readings)
-  await refusePhotosOfOthers(trx, jar, input.readings)
+  const entries = readEntries(jar, frame, readings)
   refuseNothing(input, entries, onRecord)
   const isRead = jar.state === 'done'
   const readTwice = entries.filter(({ entry }) => standingIn(jar, frame, entry.attribute, entry.replicate))

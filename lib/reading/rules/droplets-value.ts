@@ -1,4 +1,5 @@
 import { dropCount, dropsOf, readDrops } from '@/lib/batch/rules/droplets'
+import { dropsOnPhoto } from './drops-on-photo'
 import {
   computed,
   ImpossibleEntry,
@@ -11,8 +12,10 @@ import {
 export function dropletsValue(entry: TypedEntry, { planned }: ValueContext): EntryValue {
   const counted = readDrops(entry.typed)
   if (typeof counted === 'string') throw new ImpossibleEntry('typed', counted)
-  const drops = dropsOf(counted)
-  if (!drops) return { value: counted.diametersUm[0]!, word: null, detail: entry.detail }
+  const { photoDrops } = entry.detail
+  const sized = photoDrops ? dropsOnPhoto(photoDrops, counted) : counted
+  const drops = dropsOf(sized)
+  if (!drops) return { value: sized.diametersUm[0]!, word: null, detail: entry.detail }
   const measure = planned?.dropletMeasure ?? 'd50v'
   return {
     value: computed(drops[measure]),

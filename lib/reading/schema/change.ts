@@ -7,7 +7,8 @@ const reason = z.string().trim().min(1, 'A reading is changed only with a reason
 export const correction = z.object({
   id: z.uuid(),
   typed: z.string().min(1, 'Type what it should be.').max(12_000),
-  detail: entryDetail.default({}),
+  /** What was marked on a photo is measured at the jar; a correction is typed. */
+  detail: entryDetail.omit({ photoColour: true, photoDrops: true }).default({}),
   instrumentId: z.uuid().nullish(),
   isConfirmed: z.boolean().default(false),
   reason,

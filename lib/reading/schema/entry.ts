@@ -2,6 +2,8 @@ import { instant } from '@/lib/time/schema'
 import * as z from '@/lib/http/zod'
 import { conditionFields } from './conditions'
 import { attributeKey } from './attributes'
+import { photoColour } from './photo-colour'
+import { photoDrops } from './photo-drops'
 import { photoLines } from './photo-lines'
 
 const measured = z.number().min(-1e12).max(1e12)
@@ -27,6 +29,8 @@ export const entryDetail = z.strictObject({
   creamMm: measured.optional(),
   /** Layers measured on a photo rather than with a ruler. */
   photoLines: photoLines.optional(),
+  photoColour: photoColour.optional(),
+  photoDrops: photoDrops.optional(),
   grossG: measured.optional(),
   word: z.string().max(60).optional(),
   ...conditionFields,

@@ -1,0 +1,86 @@
+'use client'
+
+import { useRef, type PointerEvent, type ReactNode } from 'react'
+
+/** A place on the copy, in its pixels. */
+export type Place = { x: number; y: number }
+
+type Props = {
+  copy: { url: string; width: number; height: number }
+  /** The picture and what is drawn over it. */
+  children: ReactNode
+  /** What the loupe shows: under the finger, else what is picked. */
+  at: Place
+  /** Where the finger is, so that the loupe keeps out of its way. */
+  finger: Place | null
+  /** Drawn over the middle of the loupe. */
+  loupeMark: ReactNode
+  cursor: string
+  onDown: (place: Place) => void
+  onDrag: (place: Place) => void
+  onUp: () => void
+}
+
+export const loupePx = 140
+/** CSS pixels for one pixel of the copy. */
+const zoom = 2.5
+
+/** A photo that is marked by hand, with a loupe on the place in question. */
+export function MarkPicture({ copy, children, at, finger, loupeMark, cursor, onDown, onDrag, onUp }: Props) {
+  const box = useRef<HTMLDivElement>(null)
+
+  function place(event: PointerEvent): Place {
+    const { left, top, width, height } = box.current!.getBoundingClientRect()
+    return {
+      x: ((event.clientX - left) / width) * copy.width,
+      y: ((event.clientY - top) / height) * copy.height,
+    }
+  }
+
+  const isRight = finger ? finger.x < copy.width / 2 : true
+  const isLow = at.y < copy.height * 0.4
+  return (
+    <div
+      ref={box}
+      className={`relative mx-auto touch-none overflow-hidden border-2 border-ink ${cursor}`}
+      style={{
+        width: `min(100%, ${(62 * copy.width) / copy.height}dvh)`,
+        aspectRatio: `${copy.width} / ${copy.height}`,
+      }}
+      onPointerDown={(event) => {
+        event.currentTarget.setPointerCapture(event.pointerId)
+        onDown(place(event))
+      }}
+      onPointerMove={(event) => (finger ? onDrag(place(event)) : undefined)}
+      onPointerUp={onUp}
+      onPointerCancel={onUp}
+    >
+      {children}
+      <div
+        aria-hidden
+        className={`pointer-events-none absolute overflow-hidden rounded-full border-[3px] border-ink bg-ink ${isRight ? 'right-2' : 'left-2'} ${isLow ? 'bottom-2' : 'top-2'}`}
+        style={{
+          width: loupePx,
+          height: loupePx,
+          backgroundImage: `url(${copy.url})`,
+          backgroundRepeat: 'no-repeat',
+          backgroundSize: `${copy.width * zoom}px ${copy.height * zoom}px`,
+          backgroundPosition: `${loupePx / 2 - 3 - at.x * zoom}px ${loupePx / 2 - 3 - at.y * zoom}px`,
+        }}
+      >
+        {loupeMark}
+      </div>
+    </div>
+  )
+}
+
+/** Hairs that cross where a point is being set. */
+export function LoupeCross() {
+  const hair = 'absolute block bg-ink outline outline-1 outline-white'
+  return (
+    <>
+      <span className={`${hair} inset-x-0 h-px`} style={{ top: loupePx / 2 - 3 }} />
+      <span className={`${hair} inset-y-0 w-px`} style={{ left: loupePx / 2 - 3 }} />
+    </>
+  )
+}
