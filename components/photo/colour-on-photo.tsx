@@ -83,13 +83,14 @@ function Patching({ photoId, copy, onUse }: PatchingProps) {
     const which = inside ?? picked
     setPicked(which)
     setFinger(place)
-    if (!inside) set(which, { ...patches[which], ...place })
+    // Pressed where it lies, it stays there.
+    set(which, inside ? patches[which] : { ...patches[which], ...place })
   }
 
   const open = (['grey', 'sample'] as const).filter((which) => !touched.includes(which))
   const lab = read && 'lab' in read ? read.lab : null
   return (
-    <div className="grid gap-5 md:grid-cols-[minmax(0,1fr)_340px] lg:grid-cols-[minmax(0,1fr)_400px]">
+    <div className="grid gap-5 lg:grid-cols-[minmax(0,1fr)_400px]">
       <MarkPicture
         copy={copy}
         finger={finger}

@@ -84,7 +84,7 @@ function Measuring({ photoId, copy, onUse }: MeasuringProps) {
   }
 
   return (
-    <div className="grid gap-5 md:grid-cols-[minmax(0,1fr)_340px] lg:grid-cols-[minmax(0,1fr)_400px]">
+    <div className="grid gap-5 lg:grid-cols-[minmax(0,1fr)_400px]">
       <MarkPicture
         copy={copy}
         finger={finger}

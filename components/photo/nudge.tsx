@@ -8,7 +8,7 @@ export function Nudge({ label, says, onPress }: { label: string; says: string; o
       type="button"
       aria-label={says}
       onClick={onPress}
-      className="min-h-16 rounded border-2 border-rule bg-paper text-18 active:bg-recess"
+      className="min-h-16 rounded border-2 border-rule bg-paper text-17 active:bg-recess"
     >
       {label}
     </button>

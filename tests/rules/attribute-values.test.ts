@@ -88,6 +88,24 @@ describe('droplets', () => {
     expect(read('droplets', '3 × 5').detail).toMatchObject({ measure: 'd50v', count: 5 })
     expect(refusal(() => read('droplets', 'many'))).toContain('no diameter')
   })
+
+  // By hand: 300 px for 50 micrometres, so 30 px and 60 px are 5 and 10; Σd³/Σd² of 5 and 10 is 1125/125.
+  it('on a photo is computed from points and scale bar, and typed otherwise is refused', () => {
+    const photoDrops = {
+      ...{ photoId: '00000000-0000-7000-8000-000000000009', width: 800, height: 600 },
+      bar: { x1: 10, y1: 10, x2: 310, y2: 10, um: 50 },
+      drops: [
+        { x1: 100, y1: 100, x2: 130, y2: 100 },
+        { x1: 200, y1: 200, x2: 236, y2: 248 },
+      ],
+    }
+    const planned = { planned: { dropletMeasure: 'd32' as const } }
+    expect(read('droplets', '5; 10', planned, { photoDrops }).value).toBeCloseTo(9, 10)
+    for (const typed of ['5; 11', '5', '5; 10; 10', '5 × 2'])
+      expect(refusal(() => read('droplets', typed, planned, { photoDrops }))).toContain('do not say the same')
+    const short = { ...photoDrops, bar: { ...photoDrops.bar, x2: 15 } }
+    expect(refusal(() => read('droplets', '5; 10', planned, { photoDrops: short }))).toContain('too short')
+  })
 })
 
 describe('separation', () => {
