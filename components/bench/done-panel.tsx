@@ -9,6 +9,7 @@ import { Button } from '@/components/ui/button'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 import type { BenchJar } from '@/lib/bench/queries/bench-jar'
 import { placeOf } from '@/lib/jar/rules/at-hand'
+import type { EntryDetail } from '@/lib/reading/schema/entry'
 import { attributeName } from '@/lib/reading/schema/attributes'
 import { dayText } from '@/lib/report/rules'
 import { dayIn } from '@/lib/study/rules/calendar'
@@ -70,9 +71,9 @@ export function DonePanel({ jar, personId, mayLog, onChange, onWalk, next, onOpe
                       />
                     ))}
                 </div>
-                {current.photoLines ? (
-                  <ReadingPhoto lines={current.photoLines} of={`jar ${jar.code}`} />
-                ) : null}
+                {current.isVoid ? null : (
+                  <ReadingPhoto detail={current.detail as EntryDetail} of={`jar ${jar.code}`} />
+                )}
                 {isMine ? (
                   <div className="flex gap-3">
                     <Button density="bench" onClick={() => setChanging({ id: current.id, how: 'correct' })}>
@@ -157,7 +158,7 @@ function ReadingLine({ jar, reading, by }: LineProps) {
         {word ?? (value === null ? typed : shownWithUnit(writtenAs(jar.fields, reading.attribute), value))}
       </span>
       <span className="block text-17 text-soft">
-        typed {typed} by {reading.by}
+        {reading.detail['isEstimate'] ? 'an estimate; ' : ''}typed {typed} by {reading.by}
         {by ? `; ${by.isVoid ? 'voided' : 'corrected'}: ${by.reason}` : ''}
         {doubts.length > 0 && !by ? `; doubt: ${doubts[0]?.sentence}` : ''}
       </span>

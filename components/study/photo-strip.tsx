@@ -20,12 +20,13 @@ const height = 94
 
 /** The watch jar of one station through time, each photo at its own week of the ruler above. */
 export function PhotoStrip({ code, batch, photos, stations, picked, scale }: Props) {
-  const withPhotos = stations.filter((station) => photos.some((photo) => photo.studyStationId === station.id))
+  const ofJars = photos.filter((photo) => photo.shows === 'jar')
+  const withPhotos = stations.filter((station) => ofJars.some((photo) => photo.studyStationId === station.id))
   const station =
     withPhotos.find((one) => one.id === picked) ??
-    withPhotos.toSorted((a, b) => countAt(photos, b.id) - countAt(photos, a.id))[0]
+    withPhotos.toSorted((a, b) => countAt(ofJars, b.id) - countAt(ofJars, a.id))[0]
   if (!station) return null
-  const shown = apart(newestOfEach(photos.filter((photo) => photo.studyStationId === station.id)), (photo) =>
+  const shown = apart(newestOfEach(ofJars.filter((photo) => photo.studyStationId === station.id)), (photo) =>
     scale.x(photo.timeWeeks ?? 0),
   )
   return (

@@ -4,7 +4,6 @@ import type { Db } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
 import { doubtsOf } from '@/lib/reading/queries/doubts'
 import { readJarCode } from '@/lib/jar/rules/code'
-import type { PhotoLinesOfReading } from '@/lib/reading/schema/photo-lines'
 import { jarsToRead, type BenchJarRow } from './jars'
 import { getLabDay, type LabDay } from './lab-day'
 import { benchJar } from './bench-jar'
@@ -88,7 +87,6 @@ async function listReadingsOf(db: Db, pullJarIds: string[]) {
     .select(['r.instrumentId', 'r.recordedBy', 'r.recordedAt'])
     .select((eb) => eb.ref('r.detail').$castTo<Record<string, unknown>>().as('detail'))
     .select(doubtsOf('r').as('doubts'))
-    .select(sql<PhotoLinesOfReading | null>`r.detail -> 'photoLines'`.as('photoLines'))
     .where('r.pullJarId', 'in', pullJarIds)
     .orderBy('r.recordedAt')
     .orderBy('r.id')
