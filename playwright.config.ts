@@ -1,5 +1,5 @@
 import { defineConfig, devices } from '@playwright/test'
-import { demoLab, emptyLab, type Lab } from './tests/support/e2e-labs'
+import { demoLab, emptyLab, lookedLab, type Lab } from './tests/support/e2e-labs'
 
 // Against `next build` and `next start`, never `next dev`. `npm test` builds first and starts the PostgreSQL server
 // that TEST_DATABASE_ADMIN_URL names. The browser is Debian's; nothing is downloaded.
@@ -15,12 +15,18 @@ const serve = (lab: Lab) => ({
   gracefulShutdown: { signal: 'SIGTERM' as const, timeout: 20_000 },
 })
 
+const besides = ['**/pages.spec.ts', '**/empty-lab.spec.ts', '**/faults.spec.ts']
+
 export default defineConfig({
   testDir: 'tests/e2e',
   timeout: 120_000,
   expect: { timeout: 15_000 },
-  // One filled demo is shared by all of them.
-  workers: 1,
+  // Side by side on two cores: what writes to the demo, one after the other; and what meets only a lab of its own.
+  workers: 2,
+  projects: [
+    { name: 'demo', workers: 1, testIgnore: besides },
+    { name: 'besides', workers: 1, testMatch: besides, use: { baseURL: lookedLab.url } },
+  ],
   forbidOnly: true,
   reporter: [['list'], ['json', { outputFile: 'test-results/playwright.json' }]],
   outputDir: 'test-results/playwright',
@@ -39,5 +45,5 @@ export default defineConfig({
       ],
     },
   },
-  webServer: [serve(demoLab), serve(emptyLab)],
+  webServer: [serve(demoLab), serve(lookedLab), serve(emptyLab)],
 })

@@ -1,7 +1,7 @@
 'use client'
 
 import { usePathname } from 'next/navigation'
-import { Suspense, useEffect } from 'react'
+import { Suspense } from 'react'
 import { BenchDay } from '@/components/bench/bench-day'
 import { JarScreen, loadAhead } from '@/components/bench/later'
 import { UndoBar } from '@/components/bench/undo-bar'
@@ -9,6 +9,7 @@ import { useBenchData } from '@/components/device/use-bench-data'
 import { useRememberPerson, type BenchPerson } from '@/components/device/last-person'
 import { useOutbox } from '@/components/device/use-outbox'
 import { useReady } from '@/components/device/use-ready'
+import { useLoadAhead } from '@/components/ui/use-load-ahead'
 
 /**
  * The walk and the jars are one page: going from jar to jar needs no network, because the day's jars were
@@ -21,7 +22,7 @@ export function BenchApp({ person }: { person: BenchPerson }) {
   const isReady = useReady(areDaysKept)
   const outbox = useOutbox(refresh)
   useRememberPerson(person)
-  useEffect(loadAhead, [])
+  useLoadAhead(loadAhead)
 
   if (!bench)
     return (

@@ -2,7 +2,7 @@ import { LightSwitch } from '@/components/bench/light-switch'
 import { Tray } from '@/components/device/tray'
 import type { OutboxOnScreen } from '@/components/device/use-outbox'
 import type { Bench } from '@/lib/bench/queries/today'
-import { dayText } from '@/lib/report/rules'
+import { spokenDay } from '@/lib/study/rules/calendar'
 
 type Props = {
   bench: Bench
@@ -36,7 +36,7 @@ export function DayHead({ bench, outbox, isReady }: Props) {
               </>
             )}
           </h1>
-          {left === 0 && bench.next ? <p>Next: {dayText(bench.next)}.</p> : null}
+          {left === 0 && bench.next ? <p>Next: {spokenDay(bench.next)}.</p> : null}
           {overdue > 0 ? (
             <p className="font-650 text-alarm">
               {overdue} {overdue === 1 ? 'is' : 'are'} past the window
@@ -104,5 +104,5 @@ function DayLine({ counts: { total, done, missed, resting } }: { counts: Bench['
 
 function weekday(day: string): string {
   const name = new Date(`${day}T12:00:00`).toLocaleDateString('en-GB', { weekday: 'long' })
-  return `${name}, ${dayText(day)}`
+  return `${name}, ${spokenDay(day)}`
 }

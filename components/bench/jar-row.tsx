@@ -1,6 +1,6 @@
 import { TinyJar } from '@/components/bench/tiny-jar'
 import type { BenchJar } from '@/lib/bench/queries/bench-jar'
-import { shortDay } from '@/lib/report/rules'
+import { spokenDay } from '@/lib/study/rules/calendar'
 
 const asks = { watch: 'look, stays sealed', measuring: 'opened once', repeat: 'repeat on a spare' }
 
@@ -85,8 +85,8 @@ function windowText(jar: BenchJar, isKept: boolean, now: number, zone: string): 
   if (jar.state === 'missed') return 'not read'
   if (jar.state === 'done') return `read${jar.closedBy ? ` by ${jar.closedBy.initials}` : ''}`
   if (jar.state === 'resting') return restText(jar, now, zone)
-  if (jar.isOverdue) return `was due by ${shortDay(jar.windowTo)}`
-  return jar.isLastDay ? 'today only' : `by ${shortDay(jar.windowTo)}`
+  if (jar.isOverdue) return `was due by ${spokenDay(jar.windowTo, false)}`
+  return jar.isLastDay ? 'today only' : `by ${spokenDay(jar.windowTo, false)}`
 }
 
 /** Counts down while it rests; whoever comes early is told when to come back. */

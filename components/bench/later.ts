@@ -11,11 +11,4 @@ export const JarScreen = lazy(async () => ({ default: (await jarScreen()).JarScr
 export const ByInstrument = lazy(async () => ({ default: (await byInstrument()).ByInstrument }))
 export const FindJar = lazy(async () => ({ default: (await findJar()).FindJar }))
 
-/** Gives what calls it off. */
-export function loadAhead(): () => void {
-  const timer = setTimeout(() => {
-    // Without network they come from the device, or when they are asked for.
-    for (const load of [jarScreen, byInstrument, findJar]) load().catch(() => undefined)
-  }, 500)
-  return () => clearTimeout(timer)
-}
+export const loadAhead = () => Promise.all([jarScreen(), byInstrument(), findJar()])

@@ -5,7 +5,7 @@ import { heatLine } from '@/components/marks/heat'
 import { CycleAlarm, StationActs } from '@/components/station/station-acts'
 import { StationLabel } from '@/components/ui/station-label'
 import type { BenchStation } from '@/lib/bench/queries/today'
-import { dayText } from '@/lib/report/rules'
+import { spokenDay } from '@/lib/study/rules/calendar'
 import { capital } from '@/lib/study/rules/words'
 import { periodText } from '@/lib/station/rules/downtime'
 
@@ -136,7 +136,7 @@ function inOrder(jars: BenchStation['jars']): BenchStation['jars'] {
 }
 
 function remark(station: BenchStation, open: number, leaning: number): string {
-  if (station.jars.length === 0) return station.next ? dayText(station.next.dueOn) : 'nothing planned'
+  if (station.jars.length === 0) return station.next ? spokenDay(station.next.dueOn) : 'nothing planned'
   if (open > 0) return `${open} to read`
   if (leaning > 0) return `${leaning} ${leaning === 1 ? 'leans' : 'lean'}`
   return 'all read'

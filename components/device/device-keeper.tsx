@@ -1,6 +1,8 @@
 'use client'
 
 import { useEffect } from 'react'
+import { loadDialog } from '@/components/ui/dialog'
+import { useLoadAhead } from '@/components/ui/use-load-ahead'
 import { useDevice } from './device-context'
 import { rememberLastPerson } from './last-person'
 import { workerAddress } from './use-ready'
@@ -9,6 +11,7 @@ import { workerAddress } from './use-ready'
 export function DeviceKeeper({ person }: { person: { personId: string; initials: string } }) {
   const device = useDevice()
   const { personId, initials } = person
+  useLoadAhead(loadDialog)
 
   useEffect(() => {
     if (!device) return

@@ -7,7 +7,8 @@ import { Field } from '@/components/ui/field'
 import { Select } from '@/components/ui/select'
 import { freshOwn } from '@/lib/protocol/rules/fresh-attribute'
 import type { PlannedAttribute, Tolerance } from '@/lib/protocol/schema'
-import { ownKeyOf, type OwnAttribute } from '@/lib/reading/schema/own'
+import { ownKeyOf } from '@/lib/reading/schema/own-key'
+import type { OwnAttribute } from '@/lib/reading/schema/own'
 import { NumberPart } from './number-part'
 
 const jars = [

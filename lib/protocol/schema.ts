@@ -1,7 +1,8 @@
 import * as z from '@/lib/http/zod'
 import { conditionFields } from '@/lib/reading/schema/conditions'
-import { attributeKey } from '@/lib/reading/schema/attributes'
-import { isOwn, ownAttribute } from '@/lib/reading/schema/own'
+import { attributeKey } from '@/lib/reading/schema/own'
+import { isOwn } from '@/lib/reading/schema/own-key'
+import { ownAttribute } from '@/lib/reading/schema/own'
 
 /** The three tolerance kinds of lib/science: absolute limits, % of the initial, units from the initial. */
 export const tolerance = z

@@ -1,7 +1,7 @@
 import { instant } from '@/lib/time/schema'
 import * as z from '@/lib/http/zod'
 import { tolerance } from '@/lib/protocol/schema'
-import { attributeKey } from '@/lib/reading/schema/attributes'
+import { attributeKey } from '@/lib/reading/schema/own'
 import { entryDetail } from '@/lib/reading/schema/entry'
 
 /** What may be left out of the protocol's plan so that a batch can fill the study. */

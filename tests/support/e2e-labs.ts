@@ -4,13 +4,14 @@ import { promisify } from 'node:util'
 import { script } from '@/lib/cli/steps.mjs'
 import { urlAs } from './template'
 
-// The two labs that browser tests meet: one filled with the demo, one empty as after a first start.
+// The labs that browser tests meet: one filled with the demo, its copy for pages that are only looked at while the first
+// is written to, and one empty as after a first start.
 
-export type LabName = 'demo' | 'empty'
+export type LabName = 'demo' | 'looked' | 'empty'
 export type Lab = { name: LabName; url: string; port: number; database: string; env: Record<string, string> }
 
 export const projectRoot = path.resolve(import.meta.dirname, '../..')
-const ports = (process.env['STILLSTAND_E2E_PORTS'] ?? '4310,4311').split(',').map(Number)
+const ports = (process.env['STILLSTAND_E2E_PORTS'] ?? '4310,4311,4312').split(',').map(Number)
 
 function describeLab(name: LabName, port: number): Lab {
   // The port is in the name, so that two runs on one server do not drop each other's lab.
@@ -28,7 +29,7 @@ function describeLab(name: LabName, port: number): Lab {
       HOST: '127.0.0.1',
       PORT: String(port),
       PUBLIC_URL: url,
-      STILLSTAND_DEMO: name === 'demo' ? 'on' : 'off',
+      STILLSTAND_DEMO: name === 'empty' ? 'off' : 'on',
       STILLSTAND_FILES: path.join(projectRoot, '.data/test', name, 'files'),
       LOG_LEVEL: 'warn',
     },
@@ -37,6 +38,7 @@ function describeLab(name: LabName, port: number): Lab {
 
 export const demoLab = describeLab('demo', ports[0] ?? 4310)
 export const emptyLab = describeLab('empty', ports[1] ?? 4311)
+export const lookedLab = describeLab('looked', ports[2] ?? demoLab.port + 2)
 
 /** The one-time code that the console shows to whoever starts an empty lab; each call makes a new one. */
 export async function firstCode(): Promise<string> {

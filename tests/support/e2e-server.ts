@@ -1,30 +1,35 @@
-import { rm } from 'node:fs/promises'
-import path from 'node:path'
+import { existsSync } from 'node:fs'
+import { cp, rm } from 'node:fs/promises'
 import { keepWorker, startWebServer, waitForAnswer } from '@/lib/cli/serve.mjs'
 import { seed } from '@/lib/cli/databases.mjs'
 import { orderlyEnd } from '@/lib/cli/shut-down.mjs'
-import { demoLab, emptyLab, projectRoot as root, type Lab } from './e2e-labs'
+import { demoLab, emptyLab, lookedLab, projectRoot as root, type Lab } from './e2e-labs'
 import { ensureTemplate, withAdmin } from './template'
 
 // Run by playwright.config.ts, once per lab: a fresh database, then the built application over it, until told to stop.
 
-const labs: Record<string, Lab> = { demo: demoLab, empty: emptyLab }
+const labs: Record<string, Lab> = { demo: demoLab, looked: lookedLab, empty: emptyLab }
 const lab = labs[process.argv[2] ?? '']
-if (!lab) throw new Error('Name the lab to serve: demo or empty.')
+if (!lab) throw new Error('Name the lab to serve: demo, looked or empty.')
 
 const end = orderlyEnd()
 await end.after(serve(lab))
 
-async function serve({ name, database, port, env: labEnv }: Lab): Promise<void> {
+async function serve(lab: Lab): Promise<void> {
+  const { name, database, port, env: labEnv } = lab
   const env = { ...process.env, ...labEnv }
   const say = (line: string) => console.log(`${name}: ${line}`)
-  const template = await ensureTemplate()
-  await rm(path.dirname(labEnv['STILLSTAND_FILES'] ?? ''), { recursive: true, force: true })
-  await withAdmin(async (admin) => {
-    await admin.query(`drop database if exists ${database} with (force)`)
-    await admin.query(`create database ${database} template ${template} owner stillstand_owner`)
-  })
-  if (name === 'demo') say(await seed(root, env, say))
+  if (name !== 'looked') {
+    await create(lab, await ensureTemplate())
+    await rm(filesOf(lab), { recursive: true, force: true })
+  }
+  if (name === 'demo') {
+    say(await seed(root, env, say))
+    // While nobody is connected to it; Playwright starts one server after the other, this one first.
+    await create(lookedLab, database)
+    await rm(filesOf(lookedLab), { recursive: true, force: true })
+    if (existsSync(filesOf(lab))) await cp(filesOf(lab), filesOf(lookedLab), { recursive: true })
+  }
 
   const onLine = (process: string, line: string) => say(`${process} | ${line}`)
   const server = startWebServer({ root, env, host: '127.0.0.1', port, onLine })
@@ -34,5 +39,14 @@ async function serve({ name, database, port, env: labEnv }: Lab): Promise<void> 
   await waitForAnswer(server, { host: '127.0.0.1', port, isStopping: end.isEnding })
   void server.ended.then((how) => {
     if (!end.isEnding()) void end.now(1, new Error(`The web server of the ${name} lab ended (${how}).`))
+  })
+}
+
+const filesOf = ({ env }: Lab) => env['STILLSTAND_FILES']!
+
+async function create({ database }: Lab, template: string): Promise<void> {
+  await withAdmin(async (admin) => {
+    await admin.query(`drop database if exists ${database} with (force)`)
+    await admin.query(`create database ${database} template ${template} owner stillstand_owner`)
   })
 }

@@ -1,6 +1,7 @@
 import type { PlannedAttribute } from '@/lib/protocol/schema'
 import type { KnownKey } from '@/lib/reading/schema/attributes'
-import type { OwnAttribute, OwnKey } from '@/lib/reading/schema/own'
+import type { OwnAttribute } from '@/lib/reading/schema/own'
+import type { OwnKey } from '@/lib/reading/schema/own-key'
 
 type Begun = Partial<Omit<PlannedAttribute, 'attribute'>> & Pick<PlannedAttribute, 'tolerance'>
 

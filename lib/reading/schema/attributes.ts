@@ -1,5 +1,5 @@
-import * as z from '@/lib/http/zod'
-import { isOwn, ownKey, ownName, type OwnAttribute, type OwnKey } from './own'
+import type { OwnAttribute } from './own'
+import { isOwn, ownName, type OwnKey } from './own-key'
 
 /**
  * What can be measured on a jar. `possible` is what the instrument or the definition allows (beyond it
@@ -214,8 +214,6 @@ export const attributes = {
 export type KnownKey = keyof typeof attributes
 export type AttributeKey = KnownKey | OwnKey
 export type Attribute = Omit<Described, 'key'> & { key: AttributeKey }
-
-export const attributeKey = z.union([z.enum(Object.keys(attributes) as [KnownKey, ...KnownKey[]]), ownKey])
 
 /** By definition nothing has happened yet at the start, whether or not somebody wrote it down. */
 const nothingYet: ReadonlySet<AttributeKind> = new Set(['layers', 'word', 'type', 'colour'])

@@ -1,7 +1,7 @@
 import { instant } from '@/lib/time/schema'
 import * as z from '@/lib/http/zod'
 import { conditionFields } from './conditions'
-import { attributeKey } from './attributes'
+import { attributeKey } from './own'
 import { photoColour } from './photo-colour'
 import { photoDrops } from './photo-drops'
 import { photoLines } from './photo-lines'

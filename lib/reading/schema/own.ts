@@ -1,30 +1,13 @@
 import * as z from '@/lib/http/zod'
+import { attributes, type KnownKey } from './attributes'
+import { isOwnKey, type OwnKey } from './own-key'
 
-/** A protocol's own attribute is called by its key: "own.Foam-height" is foam height wherever it is named. */
-export type OwnKey = `own.${string}`
-
-const keyPattern = /^own\.[\p{L}\d]+(-[\p{L}\d]+)*$/u
-
-export const ownKey = z
-  .custom<OwnKey>((key) => typeof key === 'string' && key.length <= 44 && keyPattern.test(key), {
-    message: 'A name of your own is up to 40 letters, digits and single spaces.',
-  })
+const ownKey = z
+  .custom<OwnKey>(isOwnKey, { message: 'A name of your own is up to 40 letters, digits and single spaces.' })
   .meta({ type: 'string' })
 
-export function isOwn(key: string): key is OwnKey {
-  return key.startsWith('own.')
-}
-
-/** The key of a name as it was typed, or null where it has other signs than letters, digits and spaces. */
-export function ownKeyOf(name: string): OwnKey | null {
-  const { success, data } = ownKey.safeParse(`own.${name.trim().replace(/\s+/g, '-')}`)
-  return success ? data : null
-}
-
-export function ownName(key: string): string {
-  const name = key.replace(/^own\./, '').replaceAll('-', ' ')
-  return name.charAt(0).toUpperCase() + name.slice(1)
-}
+/** What is measured: one of the known, or one that a protocol has of its own. */
+export const attributeKey = z.union([z.enum(Object.keys(attributes) as [KnownKey, ...KnownKey[]]), ownKey])
 
 const jar = z.enum(['watch', 'measuring'])
 const finite = z.number('Type a number here.').min(-1e9).max(1e9)

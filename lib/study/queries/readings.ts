@@ -7,7 +7,7 @@ import { likeTyped, naturally, onDays, type Source } from '@/lib/list/queries/so
 import type { ListQuery } from '@/lib/list/schema'
 import { doubtsOf } from '@/lib/reading/queries/doubts'
 import { attributeName, attributes } from '@/lib/reading/schema/attributes'
-import { ownKeyOf } from '@/lib/reading/schema/own'
+import { ownKeyOf } from '@/lib/reading/schema/own-key'
 import { stationWhenRead } from '@/lib/station/queries/stood'
 import { getStudyHead, listStudyBatches } from './head'
 import { ownOf } from './own'
