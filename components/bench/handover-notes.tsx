@@ -7,7 +7,7 @@ import { ErrorNote } from '@/components/ui/error-note'
 import type { Bench } from '@/lib/bench/queries/today'
 import { newId } from '@/lib/db/id'
 import { handoverKeys } from '@/lib/handover/keys'
-import { dayText } from '@/lib/report/rules'
+import { spokenDay } from '@/lib/study/rules/calendar'
 
 type Props = { notes: Bench['notes']; mayRead: boolean; onChange: () => void }
 
@@ -50,7 +50,7 @@ export function HandoverNotes({ notes, mayRead, onChange }: Props) {
           <div className="min-w-0 flex-1">
             <p className="whitespace-pre-line text-20">{note.text}</p>
             <p className="text-17 text-soft">
-              {note.by}, {dayText(note.writtenAt)}
+              {note.by}, {spokenDay(note.writtenAt)}
             </p>
           </div>
           {isWaiting(note.id) ? (

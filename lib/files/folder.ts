@@ -1,9 +1,8 @@
-import { access, mkdir, open, readdir, readFile, rename, rm, stat } from 'node:fs/promises'
+import { access, mkdir, open, readFile, rename, rm } from 'node:fs/promises'
 import path from 'node:path'
 import { newId } from '@/lib/db/id'
+import { incomingIn } from './incoming'
 import type { Storage } from './storage'
-
-const temporary = '.incoming'
 
 /** Files in a folder: written beside, flushed, then moved to their name, so that a name never holds half a file. */
 export function folderStorage(folder: string): Storage {
@@ -11,7 +10,7 @@ export function folderStorage(folder: string): Storage {
   return {
     async put(key, source) {
       const target = placeOf(root, key)
-      const incoming = path.join(root, temporary)
+      const incoming = incomingIn(root)
       await mkdir(incoming, { recursive: true })
       await mkdir(path.dirname(target), { recursive: true })
       const beside = path.join(incoming, newId())
@@ -30,19 +29,6 @@ export function folderStorage(folder: string): Storage {
         () => true,
         () => false,
       )
-    },
-    async deleteTemp(olderThanMs) {
-      const incoming = path.join(root, temporary)
-      const names = (await readdir(incoming).catch(absent)) ?? []
-      let removed = 0
-      for (const name of names) {
-        const file = path.join(incoming, name)
-        const { mtimeMs } = await stat(file)
-        if (Date.now() - mtimeMs < olderThanMs) continue
-        await rm(file, { force: true })
-        removed += 1
-      }
-      return removed
     },
   }
 }

@@ -44,9 +44,6 @@ export function s3Storage(settings: S3Settings): Storage {
         throw error
       }
     },
-    async deleteTemp() {
-      return 0
-    },
   }
 }
 

@@ -8,8 +8,6 @@ export type Storage = {
   put(key: string, source: string | Uint8Array, type: string): Promise<void>
   get(key: string): Promise<Uint8Array | null>
   has(key: string): Promise<boolean>
-  /** Removes what an interrupted `put` left behind longer ago than this. */
-  deleteTemp(olderThanMs: number): Promise<number>
 }
 
 export function storage(): Storage {

@@ -1,10 +1,10 @@
 import { mkdir, open, rm } from 'node:fs/promises'
-import path from 'node:path'
 import { Readable } from 'node:stream'
 import type { IncomingMessage } from 'node:http'
 import { fileTypeFromBuffer } from 'file-type'
 import formidable, { errors as formErrors, type File } from 'formidable'
 import { env } from '@/lib/env'
+import { incomingIn } from '@/lib/files/incoming'
 import { AppError, refuse } from './errors'
 
 export type Received = { path: string; sha256: string; bytes: number; type: string; originalName: string }
@@ -21,7 +21,7 @@ export async function receive(
 ): Promise<Sent> {
   if (!/^multipart\/form-data\b/i.test(request.headers.get('content-type') ?? '') || !request.body)
     throw refuse.unsupported('This address takes a file. Send it as a form with one field named file.')
-  const folder = path.resolve(env().filesFolder, 'incoming')
+  const folder = incomingIn(env().filesFolder)
   await mkdir(folder, { recursive: true })
   const form = formidable({
     uploadDir: folder,

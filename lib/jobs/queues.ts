@@ -21,6 +21,7 @@ export const queues = {
   'flag.mail': { ...mail, policy: 'short' },
   'shelf-case.mail': mail,
   'photo.preview': { policy: 'standard', retryLimit: 3, retryDelay: 5 },
+  'photo.sweep': { policy: 'short', cron: '37 3 * * *', retryLimit: 1, retryDelay: 60 },
 } as const satisfies Record<string, Queue>
 
 export type QueueName = keyof typeof queues

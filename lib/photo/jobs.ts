@@ -1,3 +1,5 @@
+import { env } from '@/lib/env'
+import { sweepIncoming } from '@/lib/files/incoming'
 import { keptPreview } from './queries/file'
 
 export const previewQueue = 'photo.preview'
@@ -5,4 +7,12 @@ export const previewQueue = 'photo.preview'
 /** Makes the small picture ahead of the first person who looks. */
 export async function makePhotoPreview(data: { sha256: string; type: string }): Promise<void> {
   await keptPreview(data.sha256, data.type)
+}
+
+export const sweepQueue = 'photo.sweep'
+const oneDayMs = 24 * 3_600_000
+
+/** A server that died while a file arrived leaves a part of it behind, which nobody would ever read. */
+export async function sweepUploads(): Promise<void> {
+  await sweepIncoming(env().filesFolder, oneDayMs)
 }
