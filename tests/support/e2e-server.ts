@@ -42,7 +42,9 @@ async function serve(lab: Lab): Promise<void> {
   })
 }
 
-const filesOf = ({ env }: Lab) => env['STILLSTAND_FILES']!
+function filesOf({ env }: Lab): string {
+  return env['STILLSTAND_FILES']!
+}
 
 async function create({ database }: Lab, template: string): Promise<void> {
   await withAdmin(async (admin) => {
