@@ -1,6 +1,7 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { isJarCode, jarCode, jarCodes, namedJar, readJarCode } from '@/lib/jar/rules/code'
+import { missedBecause } from '@/lib/jar/rules/mishap'
 
 const alphabet = '23456789CDFHJKMNPRTVWXY'
 const code = fc.integer({ min: 0, max: 2 ** 31 - 1 }).map((seed) => {
@@ -74,5 +75,17 @@ describe('codes of jars', () => {
     expect(namedJar('J4PC7', { temperatureC: -10, isFreezeThaw: false })).toBe('−10·J4PC7')
     expect(namedJar('J4PC7', { temperatureC: null, isFreezeThaw: true })).toBe('FT·J4PC7')
     expect(namedJar('J4PC7', null)).toBe('J4PC7')
+  })
+})
+
+describe('why a jar was not read', () => {
+  it.each([
+    ['broken', 'broken', 'broken'],
+    ['broken', 'fell off the tray', 'broken: fell off the tray'],
+    ['wrong jar', 'opened by mistake', 'opened by mistake'],
+    ['lost', 'not in its place', 'lost: not in its place'],
+    ['missed', 'ran out of time', 'ran out of time'],
+  ] as const)('%s because "%s" is said once: %s', (kind, reason, said) => {
+    expect(missedBecause({ kind, reason })).toBe(said)
   })
 })

@@ -75,5 +75,7 @@ const prefixes: Partial<Record<MishapKind, string>> = {
 
 /** As the sheet, the case and the report say why there is no reading. */
 export function missedBecause({ kind, reason }: Pick<JarMishap, 'kind' | 'reason'>): string {
-  return `${prefixes[kind] ?? ''}${reason}`
+  // The jar's screen offers "broken" as the reason itself.
+  const prefix = prefixes[kind] ?? ''
+  return prefix === `${reason.toLowerCase()}: ` ? reason : `${prefix}${reason}`
 }
