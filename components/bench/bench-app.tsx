@@ -9,7 +9,7 @@ import { useBenchData } from '@/components/device/use-bench-data'
 import { useRememberPerson, type BenchPerson } from '@/components/device/last-person'
 import { useOutbox } from '@/components/device/use-outbox'
 import { useReady } from '@/components/device/use-ready'
-import { useLoadAhead } from '@/components/ui/use-load-ahead'
+import { useLoadAhead } from '@/components/ui/load-ahead'
 
 /**
  * The walk and the jars are one page: going from jar to jar needs no network, because the day's jars were

@@ -2,7 +2,7 @@
 
 import { useEffect } from 'react'
 import { loadDialog } from '@/components/ui/dialog'
-import { useLoadAhead } from '@/components/ui/use-load-ahead'
+import { useLoadAhead } from '@/components/ui/load-ahead'
 import { useDevice } from './device-context'
 import { rememberLastPerson } from './last-person'
 import { workerAddress } from './use-ready'

@@ -1,11 +1,11 @@
 'use client'
 
 import { lazy, Suspense, useEffect, useRef, useState } from 'react'
-import { useLoadAhead } from '@/components/ui/use-load-ahead'
+import { useLoadAhead, whenReached } from '@/components/ui/load-ahead'
 import type { Place } from './places'
 
 const search = () => import('./finder-search')
-const FinderSearch = lazy(async () => ({ default: (await search()).FinderSearch }))
+const FinderSearch = lazy(async () => ({ default: (await whenReached(search)).FinderSearch }))
 
 /** Any formula, batch, study, jar, ingredient or page by part of its name or code: Ctrl-K, type, Enter. */
 export function Finder({ places }: { places: Place[] }) {

@@ -1,7 +1,7 @@
 'use client'
 
 import { lazy, Suspense, useState, type ComponentProps } from 'react'
-import { useLoadAhead } from '@/components/ui/use-load-ahead'
+import { useLoadAhead, whenReached } from '@/components/ui/load-ahead'
 import type { Role } from '@/lib/auth/actor'
 import { rolesInWords } from './role-words'
 
@@ -16,7 +16,7 @@ export type Who = {
 }
 
 const opened = () => import('./person-menu-opened')
-const Opened = lazy(async () => ({ default: (await opened()).PersonMenuOpened }))
+const Opened = lazy(async () => ({ default: (await whenReached(opened)).PersonMenuOpened }))
 
 export function PersonMenu({ who }: { who: Who }) {
   const [isPressed, setPressed] = useState(false)

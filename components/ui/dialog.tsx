@@ -2,6 +2,7 @@
 
 import { lazy, Suspense, type ReactNode } from 'react'
 import type { Density } from './button'
+import { whenReached } from './load-ahead'
 
 export type DialogProps = {
   isOpen: boolean
@@ -17,7 +18,7 @@ export type DialogProps = {
 }
 
 export const loadDialog = () => import('./dialog-frame')
-const Frame = lazy(async () => ({ default: (await loadDialog()).DialogFrame }))
+const Frame = lazy(async () => ({ default: (await whenReached(loadDialog)).DialogFrame }))
 
 /** Drawn by `DialogFrame`, which comes after the page that it stands on (`loadDialog`). */
 export function Dialog(props: DialogProps) {

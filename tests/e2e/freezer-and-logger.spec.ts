@@ -15,6 +15,8 @@ test('A half is held and ended at the board, and a logger’s file is taken', as
   await openAs(page, 'jos', '/cycles')
   const running = page.getByRole('listitem').filter({ hasText: 'Silicone cream SI82, second batch' })
   await expect(page.getByRole('heading', { level: 1 })).toContainText(/overdue/)
+  // A dialog is fetched once the page stands.
+  await page.waitForLoadState('networkidle')
   watch.expectNoNetwork()
   await context.setOffline(true)
   await running.getByRole('button', { name: 'Hold it' }).click()
