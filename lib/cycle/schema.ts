@@ -32,6 +32,24 @@ export const cycleStep = z
   })
 export type CycleStep = z.output<typeof cycleStep>
 
+export const cycleAddress = z.object({ id: z.uuid() })
+
+/** What takes the place of a half that was typed wrong; with `isVoid` nothing does. */
+export const halfInstead = z
+  .object({
+    id: z.uuid(),
+    isVoid: z.boolean().default(false),
+    begunAt: instant,
+    endedAt: instant,
+    ...endFields,
+    reason: z.string().trim().min(1, 'A half is changed only with a reason. Say why.').max(500),
+  })
+  .refine((step) => Date.parse(step.endedAt) > Date.parse(step.begunAt), {
+    path: ['endedAt'],
+    message: 'The half ends after it begins. Correct one of the two times.',
+  })
+export type HalfInstead = z.output<typeof halfInstead>
+
 const pressFields = {
   ...halfFields,
   /** When it happened by the device, or the earlier time that the person gives; the server's time where left out. */

@@ -175,6 +175,14 @@ export interface Client {
   version: Generated<number>
 }
 
+export interface CycleAlarm {
+  beginPressId: string
+  dueAt: string
+  id: string
+  recordedAt: Generated<string>
+  recordedBy: string
+}
+
 export interface CyclePress {
   at: string
   claimedAt: string | null
@@ -199,11 +207,14 @@ export interface CycleStep {
   heldHours: Generated<Numeric>
   id: string
   isFrozenThrough: boolean | null
+  isVoid: Generated<boolean>
   note: Generated<string>
   reachedC: Numeric | null
+  reason: string | null
   recordedAt: Generated<string>
   recordedBy: string
   studyStationId: string
+  supersedesId: string | null
 }
 
 export interface DayReview {
@@ -663,6 +674,7 @@ export interface Reading {
 
 export interface ReadingDoubt {
   calibrationId: string | null
+  cycleStepId: string | null
   id: string
   instrumentCheckId: string | null
   readingId: string
@@ -914,6 +926,7 @@ export interface DB {
   batchWeighing: BatchWeighing
   calibration: Calibration
   client: Client
+  cycleAlarm: CycleAlarm
   cyclePress: CyclePress
   cycleStep: CycleStep
   dayReview: DayReview

@@ -18,6 +18,8 @@ export const queues = {
   'session.sweep': { policy: 'short', cron: '17 3 * * *', retryLimit: 1, retryDelay: 60 },
   'person.mail-invitation': mail,
   'person.mail-reset': mail,
+  'cycle.watch': { policy: 'short', cron: '*/5 * * * *', retryLimit: 0, retryDelay: 0 },
+  'cycle.mail': mail,
   'flag.mail': { ...mail, policy: 'short' },
   'shelf-case.mail': mail,
   'photo.preview': { policy: 'standard', retryLimit: 3, retryDelay: 5 },

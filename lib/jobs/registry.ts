@@ -1,4 +1,5 @@
 import * as z from '@/lib/http/zod'
+import { jobs as cycleJobs } from '@/lib/cycle/jobs'
 import { jobs as flagJobs } from '@/lib/flag/jobs'
 import { jobs as personJobs } from '@/lib/person/jobs'
 import { makePhotoPreview, previewQueue, sweepQueue, sweepUploads } from '@/lib/photo/jobs'
@@ -22,4 +23,5 @@ export const registry: readonly Job[] = [
   ...photoJobs,
   ...caseJobs,
   ...flagJobs,
+  ...cycleJobs,
 ]

@@ -1,9 +1,17 @@
+import { mkdtemp, readdir, readFile, rm } from 'node:fs/promises'
+import { tmpdir } from 'node:os'
+import path from 'node:path'
 import { sql } from 'kysely'
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest'
 import { GET as boardRoute } from '@/app/api/cycles/board/route'
 import { POST as pressRoute } from '@/app/api/cycles/presses/route'
 import { POST as stepRoute } from '@/app/api/cycles/route'
 import { POST as readRoute } from '@/app/api/pulls/[id]/readings/route'
+import { POST as correctRoute } from '@/app/api/cycles/[id]/correct/route'
+import { systemActor } from '@/lib/auth/actor'
+import { jobs } from '@/lib/cycle/jobs'
+import { startMailFake } from '@/lib/mail/fake'
+import { doubtsOf } from '@/lib/reading/queries/doubts'
 import { newId } from '@/lib/db/id'
 import { askedJars, benchStudy, jarAt, layered, type BenchStudy } from '../support/bench-study'
 import { call } from '../support/call'
@@ -195,5 +203,79 @@ describe('the freeze-thaw board', () => {
     const more = await countStatements(() => call(boardRoute, { cookie: qa.cookie }))
     expect(more.count).toBe(few.count)
     expect(more.count).toBeLessThanOrEqual(8)
+  })
+})
+
+describe('what is told later', () => {
+  const readAt = async (jar: Parameters<typeof layered>[1]) => {
+    const body = layered(study, jar, 0.4, 0)
+    const answer = await call(readRoute, { cookie: mada.cookie, params: { id: jar.pullJarId }, body })
+    expect(answer.status).toBe(200)
+    return body.readings[0]!.id
+  }
+  const doubtsOn = async (id: string) => {
+    const { rows } = await sql<{ doubts: { reason: string; sentence: string }[] }>`
+      select ${doubtsOf('r')} as doubts from reading r where r.id = ${id}`.execute(t.db)
+    return rows[0]!.doubts.filter((doubt) => doubt.reason === 'cycle')
+  }
+  const week = 7 * 24
+
+  it('a short half typed after the jar was read doubts it, and correcting or taking it back frees it again', async () => {
+    const id = await readAt(jarAt(await askedJars(t.db, study.studyId), 5, 1, 'watch'))
+    expect(await doubtsOn(id)).toEqual([])
+    // The jar was read in week 1, three weeks ago; the half ended before that after 4 of 16 hours.
+    const short = { id: newId(), studyStationId: placeId, cycle: 1, half: 'cold', ...whole }
+    const times = { begunAt: hoursAgo(3.5 * week), endedAt: hoursAgo(3.5 * week - 4) }
+    expect((await call(stepRoute, { cookie: mada.cookie, body: { ...short, ...times } })).status).toBe(200)
+    expect((await doubtsOn(id))[0]!.sentence).toMatch(/^Cycle 1 fell short/)
+    const instead = { ...whole, id: newId(), ...times, endedAt: hoursAgo(3.5 * week - 16) }
+    const fix = (stepId: string, body: object, who = mada) =>
+      call(correctRoute, { cookie: who.cookie, params: { id: stepId }, body })
+    expect((await fix(short.id, { ...instead, reason: ' ' })).status).toBe(422)
+    expect((await fix(short.id, { ...instead, reason: 'mine' }, jos)).status).toBe(403)
+    const again = { ...instead, reason: 'misread the sheet' }
+    expect((await fix(short.id, again)).status).toBe(200)
+    expect((await fix(short.id, again)).status).toBe(200)
+    expect(await doubtsOn(id)).toEqual([])
+    const trail = await t.db.selectFrom('trail').select('reason').where('rowId', '=', again.id).execute()
+    expect(trail).toMatchObject([{ reason: 'misread the sheet' }])
+    expect((await place()).steps).toMatchObject([{ id: again.id }])
+    const gone = { ...again, id: newId(), isVoid: true, reason: 'another study' }
+    expect((await fix(again.id, gone)).status).toBe(200)
+    expect((await place()).steps).toEqual([])
+  })
+
+  it('D03: an overdue half is mailed once to whoever began it and the technicians, and not once it is ended', async () => {
+    const folder = await mkdtemp(path.join(tmpdir(), 'stillstand-mail-'))
+    process.env['STILLSTAND_FILES'] = path.join(folder, 'files')
+    const fake = await startMailFake()
+    try {
+      await send(press('begin', { claimedAt: hoursAgo(20), deviceNow: new Date().toISOString() }))
+      const context = { db: t.db, actor: systemActor(), jobId: newId() }
+      const [watch, mail] = jobs
+      await watch!.handle(context, {})
+      await watch!.handle(context, {})
+      const { rows: waiting } = await sql<{ data: { alarmId: string; personId: string } }>`
+        select data from pgboss.job where name = 'cycle.mail' and data ->> 'alarmId' in (select a.id::text
+          from cycle_alarm a join cycle_press p on p.id = a.begin_press_id where p.study_station_id = ${placeId})
+      `.execute(t.owner)
+      expect(waiting.map(({ data }) => data.personId).toSorted()).toEqual(
+        [mada.actor.personId, jos.actor.personId].toSorted(),
+      )
+      await mail!.handle(context, waiting[0]!.data)
+      await mail!.handle(context, waiting[0]!.data)
+      const told = async () => {
+        const files = await readdir(path.join(folder, 'mail'))
+        return Promise.all(files.map((file) => readFile(path.join(folder, 'mail', file), 'utf8')))
+      }
+      expect(await told()).toHaveLength(1)
+      expect(JSON.parse((await told())[0]!).text).toContain('the cold half of cycle 1')
+      await send(press('end', whole))
+      await mail!.handle(context, waiting[1]!.data)
+      expect(await told()).toHaveLength(1)
+    } finally {
+      await fake.close()
+      await rm(folder, { recursive: true, force: true })
+    }
   })
 })

@@ -1,12 +1,14 @@
 import type { Actor } from '@/lib/auth/actor'
 import type { Trx } from '@/lib/db/client'
 import { AppError, refuse } from '@/lib/http/errors'
+import { lockStudy } from '@/lib/series/commands'
 import { doneAt } from '@/lib/reading/rules/claimed-time'
 import { findCyclePlace, type CyclePlace } from '../queries/board'
 import { halfName, refuseBegin, refuseUnlessRunning } from '../rules/refusals'
 import { shortfalls } from '../rules/shortfall'
 import { cycleState, type CycleRecord, type Running } from '../rules/state'
 import type { CyclePressed } from '../schema'
+import { reachBackFromHalf } from './reach-back'
 
 export type PressAnswer = { id: string; at: string; shortfalls: string[] }
 
@@ -53,6 +55,9 @@ export async function pressCycle(
 
 /** Of two who press at once the second waits here, and then sees what the first has done. */
 async function claimPlace(trx: Trx, studyStationId: string): Promise<CyclePlace> {
+  const found = await findCyclePlace(trx, studyStationId)
+  // Its end may doubt readings, as a jar that is saved may read it: study first, in either case.
+  if (found) await lockStudy(trx, found.studyId)
   await trx
     .selectFrom('studyStation')
     .select('id')
@@ -122,6 +127,9 @@ async function endHalf(
       recordedBy: actor.personId,
     })
     .execute()
+  // An end that is told late may lie before what was read meanwhile.
+  const kept = { cycle, half, reachedC, coreC, isFrozenThrough, hours: ended.hours }
+  await reachBackFromHalf(trx, actor, place, { id: input.id, endedAt: at, ...kept })
   return { id: input.id, at, shortfalls: found }
 }
 

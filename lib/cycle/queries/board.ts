@@ -2,6 +2,7 @@ import { sql } from 'kysely'
 import type { Actor } from '@/lib/auth/actor'
 import type { Db, Trx } from '@/lib/db/client'
 import type { PlannedCycle } from '@/lib/protocol/schema'
+import { isCurrentStep } from './current'
 import type { CyclePress, WholeHalf } from '../rules/state'
 
 export type BoardStep = WholeHalf & {
@@ -17,7 +18,7 @@ export type CycleBoard = Awaited<ReturnType<typeof cycleBoard>>
 export type CyclePlace = CycleBoard['places'][number]
 
 /** Every freeze-thaw station of a running study: what was pressed, which halves are whole, which jars wait to be looked at. */
-export async function cycleBoard(db: Db, _actor: Actor) {
+export async function cycleBoard(db: Db | Trx, _actor: Actor) {
   const places = await placesInCycle(db)
     .where('study.state', '=', 'running')
     .where('ss.endedOn', 'is', null)
@@ -32,7 +33,7 @@ export async function cycleBoard(db: Db, _actor: Actor) {
 }
 
 /** One of them, for who presses. */
-export async function findCyclePlace(trx: Trx, studyStationId: string) {
+export async function findCyclePlace(trx: Db | Trx, studyStationId: string) {
   return placesInCycle(trx).where('ss.id', '=', studyStationId).executeTakeFirst()
 }
 
@@ -43,6 +44,7 @@ function placesInCycle(db: Db | Trx) {
     .innerJoin('station', 'station.id', 'ss.stationId')
     .select([
       'ss.id',
+      'study.id as studyId',
       'study.code as studyCode',
       'study.title as studyTitle',
       'study.state as studyState',
@@ -70,9 +72,8 @@ function placesInCycle(db: Db | Trx) {
           'begunAt', step.begun_at, 'endedAt', step.ended_at, 'reachedC', step.reached_c, 'coreC', step.core_c,
           'isFrozenThrough', step.is_frozen_through, 'heldHours', step.held_hours, 'note', step.note,
           'by', who.name) order by step.cycle, step.begun_at), '[]')
-        from cycle_step step join person who on who.id = step.recorded_by where step.study_station_id = ss.id)`.as(
-        'steps',
-      ),
+        from cycle_step step join person who on who.id = step.recorded_by where step.study_station_id = ss.id
+          and ${isCurrentStep('step')})`.as('steps'),
       sql<number>`(select count(*)::int from jar where jar.study_station_id = ss.id
           and jar.state in ('stored','pulled','resting'))`.as('jarsInCycle'),
       sql<BoardJar[]>`(select coalesce(jsonb_agg(jsonb_build_object('code', jar.code, 'label', pull.label,

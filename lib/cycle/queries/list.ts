@@ -1,5 +1,6 @@
 import { isClientOnly, type Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
+import { isCurrentStep } from './current'
 
 export type CycleStepRow = Awaited<ReturnType<typeof listCycleSteps>>[number]
 
@@ -23,13 +24,18 @@ export async function listCycleSteps(db: Db, actor: Actor, studyStationId: strin
       'step.claimedAt',
       'step.note',
       'step.recordedAt',
+      'step.supersedesId',
+      'step.isVoid',
+      'step.reason',
       'person.initials as recordedBy',
     ])
+    .select(isCurrentStep('step').as('isCurrent'))
     .where('step.studyStationId', '=', studyStationId)
     .$if(isClientOnly(actor), (query) =>
       query.where('study.isShared', '=', true).where('study.clientId', '=', actor.clientId),
     )
     .orderBy('step.cycle')
     .orderBy('step.begunAt')
+    .orderBy('step.recordedAt')
     .execute()
 }

@@ -7,6 +7,7 @@ export const hoursTolerance = 1
 
 export type FreezeThawPlace = { cycleLowC: number | null; cycleHighC: number | null }
 export type LoggedHalf = {
+  id?: string
   cycle: number
   half: string
   reachedC: number | null
@@ -35,6 +36,8 @@ export function cycleDoubts(
   return [
     {
       reason: 'cycle',
+      // The doubt is gone once none of these is in force.
+      ...(short.every(({ id }) => id) ? { cycleStepIds: short.map(({ id }) => id!) } : {}),
       sentence: `${cycles.length === 1 ? 'Cycle' : 'Cycles'} ${cycles.join(', ')} fell short of ${asked ? 'what the protocol asks' : "the station's temperatures"}. Say whether the jar counts as it is.`,
     },
   ]

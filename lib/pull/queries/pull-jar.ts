@@ -1,4 +1,5 @@
 import { sql } from 'kysely'
+import { isCurrentStep } from '@/lib/cycle/queries/current'
 import type { Db, Trx } from '@/lib/db/client'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
 import type { InstrumentEvent } from '@/lib/instrument/rules/trust'
@@ -15,6 +16,7 @@ export type UsedInstrument = {
   events: InstrumentEvent[]
 }
 export type CycleHalf = {
+  id: string
   cycle: number
   half: string
   reachedC: number | null
@@ -127,10 +129,14 @@ export async function findPullJar(
       sql<boolean>`exists (select from jar_mishap m where m.pull_jar_id = pj.id and m.kind = 'pulled early')`.as(
         'isPulledEarly',
       ),
-      sql<CycleHalf[]>`(select coalesce(jsonb_agg(jsonb_build_object('cycle', step.cycle, 'half', step.half,
+      sql<
+        CycleHalf[]
+      >`(select coalesce(jsonb_agg(jsonb_build_object('id', step.id, 'cycle', step.cycle, 'half', step.half,
           'reachedC', step.reached_c, 'coreC', step.core_c, 'isFrozenThrough', step.is_frozen_through,
           'hours', extract(epoch from step.ended_at - step.begun_at) / 3600)), '[]')
-        from cycle_step step where step.study_station_id = ss.id)`.as('cycleHalves'),
+        from cycle_step step where step.study_station_id = ss.id and ${isCurrentStep('step')})`.as(
+        'cycleHalves',
+      ),
       sql<JarStay[]>`(select coalesce(jsonb_agg(jsonb_build_object('at', m.moved_at, 'name', target.name,
           'kind', target.kind, 'temperatureC', target.temperature_c, 'cycleLowC', target.cycle_low_c,
           'cycleHighC', target.cycle_high_c,

@@ -5,7 +5,8 @@ import { sentenceOf, type SentenceContext } from '@/lib/science/sentence'
 import { spokenDay } from '@/lib/study/rules/calendar'
 import { changedConditions, type Conditions } from './conditions'
 
-export type EntryDoubt = { reason: string; sentence: string }
+/** A doubt that halves of a cycle brought falls away with the last of them that is in force. */
+export type EntryDoubt = { reason: string; sentence: string; cycleStepIds?: string[] }
 
 export type UsedInstrument = { code: string; dueOn: string | null; result: string | null }
 

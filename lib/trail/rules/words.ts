@@ -8,6 +8,7 @@ export const tableWords: Record<string, string> = {
   client: 'client',
   cycle_press: 'press at the freeze-thaw board',
   cycle_step: 'half of a freeze-thaw cycle',
+  cycle_alarm: 'overdue half of a cycle, told by mail',
   flag: 'flag',
   flag_comment: 'comment on a flag',
   formula: 'formula',
