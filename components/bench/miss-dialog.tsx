@@ -30,7 +30,8 @@ const whatItMeans: Record<MishapKind, string> = {
 }
 
 type Props = {
-  jar: Pick<BenchJar, 'name' | 'code' | 'pullJarId' | 'version'>
+  jar: Pick<BenchJar, 'name' | 'code' | 'pullJarId'>
+  versionNow: () => Promise<number>
   /** Before its window: the one thing to note is that it is pulled early. */
   isEarly?: boolean
   onClose: () => void
@@ -39,7 +40,7 @@ type Props = {
 }
 
 /** A jar that is not read, or not when it should be, is an entry too: what happened, why, and what follows. */
-export function MissDialog({ jar, isEarly = false, onClose, onDone }: Props) {
+export function MissDialog({ jar, versionNow, isEarly = false, onClose, onDone }: Props) {
   const { send } = useOutbox()
   const [kind, setKind] = useState<MishapKind | null>(isEarly ? 'pulled early' : null)
   const [reason, setReason] = useState('')
@@ -50,13 +51,14 @@ export function MissDialog({ jar, isEarly = false, onClose, onDone }: Props) {
   async function note() {
     setBusy(true)
     setError(null)
+    const version = await versionNow()
     const now = new Date().toISOString()
     try {
       const outcome = await send<NotedMishap>({
         url: jarKeys.mishaps(jar.code),
         body: {
           ...{ id: newId(), kind, reason, claimedAt: now, deviceNow: now },
-          pull: { pullJarId: jar.pullJarId, version: jar.version },
+          pull: { pullJarId: jar.pullJarId, version },
         },
         about: {
           ...{ kind: 'missed', label: `Jar ${jar.name}`, code: jar.code, pullJarId: jar.pullJarId },

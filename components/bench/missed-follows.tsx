@@ -43,6 +43,7 @@ export function EarlyAct({ jar, onChange }: { jar: BenchJarPage; onChange: () =>
       {isOpen ? (
         <MissDialog
           jar={jar}
+          versionNow={() => Promise.resolve(jar.version)}
           isEarly
           onClose={() => setOpen(false)}
           onDone={() => {

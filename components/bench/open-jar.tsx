@@ -95,6 +95,7 @@ export function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }
       {isMissing ? (
         <MissDialog
           jar={jar}
+          versionNow={entry.versionNow}
           onClose={() => setMissing(false)}
           onDone={(substitute) => {
             setMissing(false)

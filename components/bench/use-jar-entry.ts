@@ -164,6 +164,9 @@ export function useJarEntry(options: Options) {
     if (following) goTo(following)
   }
 
+  /** Opening counts as a change of the jar; the jar as it is shown may still be the one before. */
+  const versionNow = async () => Math.max(jar.version, (await opening.current) ?? 0)
+
   async function save(extra: Answer = {}) {
     const filled = withIds(draft, slots)
     const confirmed = [...new Set([...filled.confirmed, ...(extra.confirmed ?? [])])]
@@ -172,10 +175,9 @@ export function useJarEntry(options: Options) {
     const readings = entriesOf(slots, sending, jar.fillHeightMm, (s) => dayInstrument(jar, s, chosen))
     const missing = fields.filter((f) => !readings.some((r) => r.attribute === f.attribute))
     setBusy(true)
-    // Opening counts as a change of the jar; the jar as it is shown may still be the one before.
-    const opened = (await opening.current) ?? jar.version
+    const version = extra.version ?? (await versionNow())
     const body = {
-      version: extra.version ?? Math.max(jar.version, opened),
+      version,
       claimedAt: paperAt ?? new Date().toISOString(),
       ...(paperAt === null ? {} : { isFromPaper: true }),
       ...(part === undefined ? {} : { isPartial: true }),
@@ -254,7 +256,19 @@ export function useJarEntry(options: Options) {
       draft.instruments[`${slot.field.attribute}.${slot.replicate}`] ?? dayInstrument(jar, slot, chosen),
     goTo,
     note: (note: string) => setDraft((d) => ({ ...d, note })),
-    ...{ type, fill, measure, markOnPhoto, step, save, chooseInstrument, setConditions, heightOf, setHeight },
+    ...{
+      versionNow,
+      type,
+      fill,
+      measure,
+      markOnPhoto,
+      step,
+      save,
+      chooseInstrument,
+      setConditions,
+      heightOf,
+      setHeight,
+    },
     stepHeight: (tab: FieldTab, by: number) => setHeight(tab, heightOf(tab) + by),
     /** Whether it is read under other conditions than the initial was. */
     isChanged: (slot: Slot) =>
