@@ -15,13 +15,15 @@ const serve = (lab: Lab) => ({
   gracefulShutdown: { signal: 'SIGTERM' as const, timeout: 20_000 },
 })
 
-const besides = ['**/pages.spec.ts', '**/empty-lab.spec.ts', '**/faults.spec.ts']
+// As long as all the others together.
+const besides = ['**/pages.spec.ts', '**/faults.spec.ts']
 
 export default defineConfig({
   testDir: 'tests/e2e',
   timeout: 120_000,
   expect: { timeout: 15_000 },
-  // Side by side on two cores: what writes to the demo, one after the other; and what meets only a lab of its own.
+  // Side by side on two cores: what writes to the demo or to the empty lab, and what only looks or
+  // has a database of its own. Within a row one after the other.
   workers: 2,
   projects: [
     { name: 'demo', workers: 1, testIgnore: besides },
