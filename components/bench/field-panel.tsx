@@ -55,7 +55,7 @@ export function FieldPanel({ jar, entry, hasNextJar }: Props) {
           )
         ) : (
           <Landing key={entry.at} isWide={here !== undefined && hasOwnPanel(here.slot)}>
-            {kind === 'word' ? <WordPanel entry={entry} group={group} /> : null}
+            {kind === 'word' ? <WordPanel jar={jar} entry={entry} group={group} /> : null}
             {here && hasOwnPanel(here.slot) ? (
               <KindPanel
                 {...{ jar, slot: here.slot, text: here.text, verdict: here.verdict, read }}

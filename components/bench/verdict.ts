@@ -1,7 +1,7 @@
 import { shownValue } from '@/lib/study/rules/words'
 import type { DraftEntry, Slot } from '@/components/bench/draft'
 import type { BenchField } from '@/lib/bench/rules'
-import { ImpossibleEntry } from '@/lib/reading/rules/impossible-entry'
+import { ImpossibleEntry, type EntryValue } from '@/lib/reading/rules/impossible-entry'
 import { valueOf } from '@/lib/reading/rules/value'
 import { changedConditions, conditionsIn } from '@/lib/reading/rules/conditions'
 import { bandUsed, isNearEdge, nearerEdge } from '@/lib/science/band'
@@ -36,8 +36,8 @@ export function verdictOf(field: BenchField, entry: DraftEntry | undefined, jar:
     const last = field.last[0]?.value ?? null
     const { planned, initialDetail: initial, emulsionType } = field
     const spindles = jar.instruments.find((one) => one.id === entry.instrumentId)?.spindles ?? []
-    const { value } = valueOf(entry, { planned, jar, spindles, last, initial, emulsionType })
-    return { ...judged(field, value), doubts: doubtsOf(field, entry, value) }
+    const { value, detail } = valueOf(entry, { planned, jar, spindles, last, initial, emulsionType })
+    return { ...judged(field, value), doubts: doubtsOf(field, entry, { value, detail }) }
   } catch (error) {
     if (!(error instanceof ImpossibleEntry)) throw error
     const part = error.field === 'detail.topMm' ? 'top' : error.field === 'detail.bottomMm' ? 'bottom' : null
@@ -46,11 +46,12 @@ export function verdictOf(field: BenchField, entry: DraftEntry | undefined, jar:
 }
 
 /** By the same rules as the server's. */
-function doubtsOf(field: BenchField, { detail }: DraftEntry, value: number): string[] {
+function doubtsOf(field: BenchField, { detail }: DraftEntry, read: Omit<EntryValue, 'word'>): string[] {
   const { torquePercent } = detail
+  const { value } = read
   const room = field.band && field.initial !== null ? nearerEdge(field.band, field.initial) : Infinity
   const torque = torquePercent === undefined ? null : torqueDoubtWithin(torquePercent, room, value)
-  const changed = changedConditions(conditionsIn(detail), field.conditions)
+  const changed = changedConditions(conditionsIn({ ...detail, ...read.detail }), field.conditions)
   return [...(torque ? [`${torque}.`] : []), ...(changed ? [changed] : [])]
 }
 

@@ -102,6 +102,16 @@ export function openStore(personId: string) {
       await (await open()).put('days', kept, key)
     },
 
+    /** Pictures lie under their addresses: those of others go; gives which of these are still to be fetched. */
+    async keepPicturesOf(addresses: readonly string[]): Promise<string[]> {
+      const { transaction } = await change('days')
+      const rows = transaction.objectStore('days')
+      const kept = (await rows.getAllKeys()).filter((key) => key.startsWith('/'))
+      await Promise.all(kept.filter((key) => !addresses.includes(key)).map((key) => rows.delete(key)))
+      await transaction.done
+      return addresses.filter((address) => !kept.includes(address))
+    },
+
     /** What was read goes, what was typed stays. */
     async dropData(): Promise<void> {
       await (await open()).clear('days')

@@ -8,6 +8,7 @@ import { benchKeys } from '@/lib/bench/keys'
 import { ClientError, fetcher } from '@/lib/http/fetcher'
 import { benchOn, labDayHere, pagesByCode, type KnownDays } from './bench-data'
 import { useDevice } from './device-context'
+import { keepStartPhotos } from './start-photo'
 
 /** Others' entries appear within five seconds. */
 const askEveryMs = 3_500
@@ -60,6 +61,8 @@ export function useBenchData(openCode: string | null) {
       .keepData('days', { readAt: read.now, data: days })
       .then(() => setDaysKept(true))
       .catch(() => undefined)
+    // Beside everything else: a jar is read without its picture too.
+    void keepStartPhotos(device.store, days.jars, device.personId).catch(() => undefined)
   }, [device, showBench, showPages])
 
   const readBench = useCallback(async () => {

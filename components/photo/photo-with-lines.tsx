@@ -11,10 +11,22 @@ type Props = {
   tiltDegrees: number
   /** The line in hand. */
   picked?: Line
+  /** Where it is too small for words. */
+  isUnnamed?: boolean
 }
 
 /** A photo under its four lines, each named at its end. */
-export function PhotoWithLines({ src, alt, width, height, lines, axisX, tiltDegrees, picked }: Props) {
+export function PhotoWithLines({
+  src,
+  alt,
+  width,
+  height,
+  lines,
+  axisX,
+  tiltDegrees,
+  picked,
+  isUnnamed,
+}: Props) {
   const slope = Math.tan((tiltDegrees * Math.PI) / 180)
   const at = (line: Line, x: number) => lines[line] - (x - axisX) * slope
   const text = height / 36
@@ -37,19 +49,23 @@ export function PhotoWithLines({ src, alt, width, height, lines, axisX, tiltDegr
                 vectorEffect="non-scaling-stroke"
               />
             ))}
-            <text
-              x={width - text * 0.4}
-              y={at(line, width) + (line === 'fillTop' || line === 'bottomEdge' ? -0.4 * text : 1.05 * text)}
-              fontSize={text}
-              fontWeight={line === picked ? 700 : 400}
-              textAnchor="end"
-              stroke="#FFFFFF"
-              strokeWidth={text / 4}
-              paintOrder="stroke"
-              style={{ fill: '#0E1D17' }}
-            >
-              {lineNames[line]}
-            </text>
+            {isUnnamed ? null : (
+              <text
+                x={width - text * 0.4}
+                y={
+                  at(line, width) + (line === 'fillTop' || line === 'bottomEdge' ? -0.4 * text : 1.05 * text)
+                }
+                fontSize={text}
+                fontWeight={line === picked ? 700 : 400}
+                textAnchor="end"
+                stroke="#FFFFFF"
+                strokeWidth={text / 4}
+                paintOrder="stroke"
+                style={{ fill: '#0E1D17' }}
+              >
+                {lineNames[line]}
+              </text>
+            )}
           </g>
         ))}
       </svg>

@@ -1,9 +1,12 @@
 import Link from 'next/link'
 import type { TimeScale } from '@/components/charts/time-scale'
+import { PhotoWithLines } from '@/components/photo/photo-with-lines'
 import { StationLabel } from '@/components/ui/station-label'
 import { photoKeys } from '@/lib/photo/keys'
 import type { CurvesPage } from '@/lib/study/queries/curves'
+import { attributeOf } from '@/lib/reading/schema/attributes'
 import { degrees } from '@/lib/study/rules/finding'
+import { shownWithUnit } from '@/lib/study/rules/words'
 
 type Props = {
   code: string
@@ -30,7 +33,7 @@ export function PhotoStrip({ code, batch, photos, stations, picked, scale }: Pro
     scale.x(photo.timeWeeks ?? 0),
   )
   return (
-    <section aria-label={`Photos at ${nameOf(station)}`} className="relative" style={{ height: height + 12 }}>
+    <section aria-label={`Photos at ${nameOf(station)}`} className="relative" style={{ height: height + 30 }}>
       <div className="absolute top-6 left-0 hidden sm:block">
         <StationLabel celsius={station.isFreezeThaw ? null : station.temperatureC} size={46} />
         <p className="mt-1 text-13 text-soft">photos</p>
@@ -42,17 +45,7 @@ export function PhotoStrip({ code, batch, photos, stations, picked, scale }: Pro
           className="absolute top-1"
           style={{ left: scale.x(photo.timeWeeks ?? 0) - width / 2 }}
         >
-          {/* A private picture behind a permission check: the image optimiser cannot fetch it. */}
-          {/* eslint-disable-next-line @next/next/no-img-element */}
-          <img
-            src={photoKeys.preview(photo.id)}
-            alt={`Jar ${photo.jarCode} at ${nameOf(station)}, ${photo.label ?? 'initial'}`}
-            width={width}
-            height={height}
-            loading="lazy"
-            className="block border border-ink object-cover"
-            style={{ width, height }}
-          />
+          <Photo photo={photo} at={nameOf(station)} />
         </a>
       ))}
       {withPhotos.length > 1 ? (
@@ -72,6 +65,38 @@ export function PhotoStrip({ code, batch, photos, stations, picked, scale }: Pro
         </p>
       ) : null}
     </section>
+  )
+}
+
+/** Under the lines that its separation was measured by, and the percent they make, where it was measured on it. */
+function Photo({ photo, at }: { photo: Props['photos'][number]; at: string }) {
+  const src = photoKeys.preview(photo.id)
+  const alt = `Jar ${photo.jarCode} at ${at}, ${photo.label ?? 'initial'}`
+  const { measured } = photo
+  if (!measured)
+    return (
+      // A private picture behind a permission check: the image optimiser cannot fetch it.
+      // eslint-disable-next-line @next/next/no-img-element
+      <img
+        {...{ src, alt, width, height }}
+        loading="lazy"
+        className="block border border-ink object-cover"
+        style={{ width, height }}
+      />
+    )
+  const { percent, ...lines } = measured
+  const drawn = (height * lines.width) / lines.height
+  return (
+    <>
+      <span className="block overflow-hidden border border-ink" style={{ width, height }}>
+        <span className="relative block" style={{ width: drawn, marginLeft: (width - drawn) / 2 }}>
+          <PhotoWithLines {...lines} src={src} alt={`${alt}, with the lines it was measured by`} isUnnamed />
+        </span>
+      </span>
+      <span className="block text-center text-13 whitespace-nowrap">
+        {shownWithUnit(attributeOf('separation'), percent)}
+      </span>
+    </>
   )
 }
 

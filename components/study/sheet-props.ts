@@ -103,9 +103,9 @@ function flagOf(flag: SheetPage['flags'][number], shelves: SheetShelf[], sheet: 
 export function stripOf(shelf: SheetShelf, weeks: number): StripAttribute[] {
   const cell = shelf.cells.find((one) => one.weeks === weeks)
   return (cell?.values ?? []).map(
-    ({ attribute, text, isOut, band, lowerText, upperText, initial, last, now }) => ({
+    ({ attribute, text, isEstimate, isOut, band, lowerText, upperText, initial, last, now }) => ({
       key: attribute,
-      name: attributeName(attribute),
+      name: isEstimate ? `${attributeName(attribute)}, an estimate` : attributeName(attribute),
       text,
       isOut,
       lower: band.lower,

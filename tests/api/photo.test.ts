@@ -9,8 +9,11 @@ import { GET as copy, POST as addCopy } from '@/app/api/photos/[id]/copy/route'
 import { GET as proposal } from '@/app/api/photos/[id]/proposal/route'
 import { GET as original } from '@/app/api/photos/[id]/original/route'
 import { GET as preview } from '@/app/api/photos/[id]/preview/route'
+import { GET as days } from '@/app/api/bench/days/route'
 import { POST as log } from '@/app/api/pulls/[id]/readings/route'
+import type { BenchDays } from '@/lib/bench/queries/days'
 import { newId } from '@/lib/db/id'
+import { transact } from '@/lib/db/transact'
 import { sql } from 'kysely'
 import { askedJars, benchStudy, jarAt, layered, type AskedJar, type BenchStudy } from '../support/bench-study'
 import { call } from '../support/call'
@@ -274,6 +277,50 @@ describe('a reading measured on a photo', () => {
       .executeTakeFirstOrThrow()
     expect(row.value).toBe(10)
     expect(row.detail).toMatchObject({ photoLines: { photoId: id, lines } })
+  })
+})
+
+describe('the photo that a jar is looked at beside', () => {
+  const startOf = async (jar: AskedJar) => {
+    const known: BenchDays = (await call(days, { cookie: technician.cookie })).body
+    return known.jars.find((one) => one.pullJarId === jar.pullJarId)!.startPhoto
+  }
+  const photographed = async (asked: AskedJar, shows: string) => {
+    const id = newId()
+    const data = form(await picture(12, 16), id)
+    data.set('pullJarId', asked.pullJarId)
+    data.set('shows', shows)
+    expect((await call(add, { cookie: technician.cookie, body: data })).status).toBe(200)
+    return id
+  }
+  const batchSeen = (batchId: string, takenAt: string) =>
+    transact(t.db, formulator.actor, {}, async (trx) => {
+      const id = newId()
+      const file = { sha256: 'a'.repeat(64), bytes: 9, type: 'image/jpeg', width: 3, height: 4 }
+      await trx
+        .insertInto('batchPhoto')
+        .values({ id, batchId, ...file, takenBy: formulator.actor.personId, takenAt })
+        .execute()
+      return id
+    })
+
+  it("is the jar's own of its first pull, else its batch's from before the start, else none", async () => {
+    const { studyId, batchId, startedAt } = await benchStudy(t.db, formulator.actor, 2)
+    const asked = await askedJars(t.db, studyId)
+    const [first, next] = [jarAt(asked, 45, 1, 'watch'), jarAt(asked, 45, 2, 'watch')]
+    const [opened, other] = [jarAt(asked, 45, 2), jarAt(asked, 25, 2, 'watch')]
+    expect(next.code, 'one jar, seen again').toBe(first.code)
+
+    // Weeks later is not as at the start, and a patch beside a grey card shows no jar.
+    await batchSeen(batchId, new Date(Date.parse(startedAt) + 9 * 86_400_000).toISOString())
+    await photographed(first, 'colour')
+    for (const jar of [first, next, opened, other]) expect(await startOf(jar)).toBeNull()
+
+    const ofBatch = await batchSeen(batchId, new Date(Date.parse(startedAt) - 86_400_000).toISOString())
+    const ofJar = await photographed(first, 'jar')
+    expect(await startOf(next)).toMatchObject({ of: 'jar', id: ofJar, label: 'week 1' })
+    for (const jar of [first, opened, other])
+      expect(await startOf(jar)).toMatchObject({ of: 'batch', id: ofBatch, label: null })
   })
 })
 

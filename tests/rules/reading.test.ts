@@ -4,9 +4,11 @@ import { cycleDoubts } from '@/lib/cycle/rules/shortfall'
 import {
   askedConditions,
   changedConditions,
+  conditionsIn,
   conditionWords,
   methodText,
 } from '@/lib/reading/rules/conditions'
+import { howRead } from '@/lib/reading/rules/how-read'
 import { conditionDoubts } from '@/lib/reading/rules/entry-doubts'
 import { massChangePercent } from '@/lib/science/mass-change'
 import { ImpossibleEntry, type TypedEntry, type ValueContext } from '@/lib/reading/rules/impossible-entry'
@@ -142,7 +144,7 @@ describe('conditions', () => {
   it('are the initial’s own, then what the fields of the plan ask for; words of a method are not read', () => {
     expect(initial).toEqual({
       ...{ spring: 'medium', spindle: 'T-bar C', rpm: 10, seconds: 30, path: 'descending' },
-      ...{ restMinutes: null, sampleTemperatureC: 25 },
+      ...{ restMinutes: null, sampleTemperatureC: 25, colourBy: null },
       ...{ phMethod: null, extractParts: null, extractMinutes: null },
     })
   })
@@ -162,6 +164,30 @@ describe('conditions', () => {
       /^Measured with the electrode dipped instead of an extract;/,
     )
     expect(doubt({ extractParts: 5 })).toMatch(/an extract 1 to 5 instead of 1 to 10/)
+  })
+  it('of a colour are whether it was measured or told from a photo [practice]', () => {
+    const lab = { L: 72, a: 1, b: 15 }
+    const [measured, told] = [{ lab }, { lab, isEstimate: true }]
+    const doubt = (used: object, initial: object) =>
+      changedConditions(conditionsIn({ ...used }), askedConditions({ ...initial }, {}))
+    expect(doubt(told, measured)).toMatch(
+      /^Measured with an estimate of the colour instead of a colour instr/,
+    )
+    expect(doubt(measured, told)).toMatch(/^Measured with a colour instrument instead of an estimate/)
+    for (const same of [measured, told]) expect(doubt(same, same)).toBeNull()
+    expect(doubt(told, {}), 'nothing is known of the initial').toBeNull()
+  })
+  it.each([
+    ['separation', { topMm: 2, bottomMm: 0 }, 'with a ruler'],
+    ['separation', { topMm: 2, bottomMm: 0, photoLines: {} }, 'lines on a photo'],
+    ['separation', { topMm: 0, bottomMm: 0 }, null],
+    ['separation', { topMm: 0.5, bottomMm: 0, isUnderRuler: true }, null],
+    ['colour', { isEstimate: true, photoColour: {} }, 'colour from a photo, an estimate'],
+    ['colour', { isEstimate: true }, 'an estimate'],
+    ['droplets', { photoDrops: {} }, 'drops on a photo'],
+    ['ph', {}, null],
+  ])('of %s with %j say that it was read: %s', (attribute, detail, said) => {
+    expect(howRead({ attribute, detail })).toBe(said)
   })
   const good = { code: 'V1', dueOn: '2027-01-04', result: 'good' }
   it('are no doubt where they are the initial’s', () => {

@@ -5,6 +5,7 @@ import { listJarPages, listUsableInstruments } from './jar'
 import { jarsToRead } from './jars'
 import { getLabDay } from './lab-day'
 import { getRevision } from './revision'
+import { startPhoto } from './start-photo'
 import { todaysBench } from './today'
 
 export type BenchDays = Awaited<ReturnType<typeof benchDays>>
@@ -21,6 +22,7 @@ export async function benchDays(db: Db, actor: Actor) {
   const { revision, today } = await getRevision(db, actor)
   const day = await getLabDay(db)
   const rows = await jarsToRead(db)
+    .select(startPhoto)
     .where('study.state', '=', 'running')
     .where('pj.state', 'in', ['due', 'resting'])
     .where('pull.dueOn', '<=', sql<string>`${day.today}::date + ${sql.lit(daysAhead)}`)

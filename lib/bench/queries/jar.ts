@@ -7,6 +7,7 @@ import { readJarCode } from '@/lib/jar/rules/code'
 import { jarsToRead, type BenchJarRow } from './jars'
 import { getLabDay, type LabDay } from './lab-day'
 import { benchJar } from './bench-jar'
+import { startPhoto, type StartPhoto } from './start-photo'
 import { sayWhyNotToRead } from './why-not-to-read'
 import { listCurrentSeries, listInitialMeans, listLastReadings } from './values'
 
@@ -17,6 +18,7 @@ export async function getBenchJar(db: Db, _actor: Actor, typedCode: string) {
   const code = readJarCode(typedCode) ?? typedCode.trim().toUpperCase()
   const { zone, now, today } = await getLabDay(db)
   const row = await jarsToRead(db)
+    .select(startPhoto)
     .where('jar.code', '=', code)
     // What is to be read comes before what was read, then the earliest due, then the newest read.
     .orderBy(sql`pj.state in ('due', 'resting') desc`)
@@ -33,7 +35,7 @@ export async function getBenchJar(db: Db, _actor: Actor, typedCode: string) {
 /** The pages of several jars at the price of one; the instruments are the same for all. */
 export async function listJarPages(
   db: Db,
-  rows: readonly BenchJarRow[],
+  rows: readonly (BenchJarRow & { startPhoto: StartPhoto | null })[],
   { zone, now, today }: LabDay,
   only?: { batchId: string; studyStationId: string },
 ) {
@@ -68,6 +70,7 @@ export async function listJarPages(
     fillHeightMm: row.fillHeightMm ?? row.plan.fillHeightMm,
     pack: row.plan.pack,
     note: row.note,
+    startPhoto: row.startPhoto,
     /** Not due yet: what the screen says instead of offering fields. */
     isEarly:
       row.state === 'due' &&

@@ -2,10 +2,11 @@ import { sql } from 'kysely'
 import type { Actor } from '@/lib/auth/actor'
 import type { Db } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
+import { howRead } from '../rules/how-read'
 import { doubtsOf } from './doubts'
 import { studiesOf } from '@/lib/study/queries/scope'
 
-export type ReadingVersion = {
+type Row = {
   id: string
   attribute: string
   replicate: number
@@ -24,10 +25,12 @@ export type ReadingVersion = {
   /** The one that counts, or the void that says none does. */
   isCurrent: boolean
 }
+/** `how` it was read: with a ruler, by lines on a photo; null where nothing tells. */
+export type ReadingVersion = Row & { how: string | null }
 
 /** Everything that was ever entered in this place, the first entry first; the last is the one in force. */
 export async function readingHistory(db: Db, actor: Actor, id: string): Promise<ReadingVersion[]> {
-  const { rows } = await sql<ReadingVersion>`
+  const { rows } = await sql<Row>`
     with recursive older as (
       select id, supersedes_id, 0 as depth from reading where id = ${id}
       union all
@@ -46,5 +49,5 @@ export async function readingHistory(db: Db, actor: Actor, id: string): Promise<
     order by chain.depth
   `.execute(db)
   if (rows.length === 0) throw refuse.notFound('There is no such reading.')
-  return rows
+  return rows.map((row) => ({ ...row, how: howRead(row) }))
 }

@@ -17,7 +17,10 @@ export type Conditions = {
   phMethod: PhMethod | null
   extractParts: number | null
   extractMinutes: number | null
+  /** A colour by an instrument, or told from a photo. */
+  colourBy: ColourBy | null
 }
+type ColourBy = 'measured' | 'estimate'
 export type ConditionKey = keyof Conditions
 
 /** What is asked about each attribute whose readings compare only under the same conditions. */
@@ -48,6 +51,7 @@ export function conditionsIn(detail: Record<string, unknown>): Conditions {
     phMethod: phMethods.find((method) => method === detail['phMethod']) ?? null,
     extractParts: number('extractParts'),
     extractMinutes: number('extractMinutes'),
+    colourBy: detail['lab'] ? (detail['isEstimate'] ? 'estimate' : 'measured') : null,
   }
 }
 
@@ -120,9 +124,15 @@ export function changedConditions(used: Conditions, initial: Conditions): string
     Math.abs(used.sampleTemperatureC! - initial.sampleTemperatureC!) > temperatureToleranceC
       ? `the sample at ${used.sampleTemperatureC} °C instead of ${initial.sampleTemperatureC} °C`
       : '',
+    differs('colourBy') ? colourWords[used.colourBy!] : '',
   ].filter(Boolean)
   if (changed.length === 0) return null
   return `Measured with ${changed.join(' and ')}; such readings do not compare. Measure again as at the start.`
+}
+
+const colourWords: Record<ColourBy, string> = {
+  estimate: 'an estimate of the colour instead of a colour instrument',
+  measured: 'a colour instrument instead of an estimate of the colour',
 }
 
 const methodWords: Record<PhMethod, string> = {

@@ -95,6 +95,7 @@ export type ReadingDetail = SeenLayers & {
   spindle?: string
   rpm?: number
   grossG?: number
+  isEstimate?: boolean
 }
 
 /** What counts: readings that nothing superseded and that are not void. */

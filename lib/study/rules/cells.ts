@@ -33,7 +33,7 @@ type Reading = {
   attribute: string
   value: number | null
   readBy: string
-  detail: SeenLayers & { topMm?: number; bottomMm?: number }
+  detail: SeenLayers & { topMm?: number; bottomMm?: number; isEstimate?: boolean }
 }
 type Series = {
   batchId: string
@@ -70,6 +70,8 @@ export type Cell = {
 export type CellValue = {
   attribute: string
   text: string
+  /** Told from a photo, and no measurement. */
+  isEstimate: boolean
   isOut: boolean
   band: Band
   lowerText: string | null
@@ -110,6 +112,7 @@ type Own = {
 }
 
 function initialCell(own: Own, series: Series[]): Cell {
+  const initials = own.readings.filter((r) => r.batchId === own.batchId && r.studyStationId === null)
   return {
     weeks: 0,
     pullId: null,
@@ -124,9 +127,10 @@ function initialCell(own: Own, series: Series[]): Cell {
     ...nothingBeside,
     mishaps: [],
     code: null,
-    readBy: own.readings.find((r) => r.batchId === own.batchId && r.studyStationId === null)?.readBy ?? null,
+    readBy: initials[0]?.readBy ?? null,
     values: series.map(({ attribute, finding }) => ({
       ...valueOf(attribute, own.plan, finding, finding.initial),
+      isEstimate: isEstimated(initials, attribute),
       initial: finding.initial,
       last: null,
     })),
@@ -147,6 +151,7 @@ function pullCell(jars: PullJar[], own: Own, series: Series[], before: Cell): Ce
     return {
       ...valueOf(attribute, own.plan, finding, now),
       ...(text === null ? {} : { text }),
+      isEstimate: isEstimated(readings, attribute),
       initial: finding.initial,
       last: last?.now ?? last?.last ?? null,
     }
@@ -255,6 +260,10 @@ function valueOf(key: string, plan: Describing, finding: SeriesFinding, now: num
     band: finding.band,
     now,
   }
+}
+
+function isEstimated(readings: Reading[], attribute: string): boolean {
+  return readings.some((reading) => reading.attribute === attribute && reading.detail.isEstimate === true)
 }
 
 function shownOf(readings: Reading[], attribute: string): number | null {

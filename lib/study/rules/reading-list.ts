@@ -1,6 +1,7 @@
 import { namedJar } from '@/lib/jar/rules/code'
 import { choice, day, describeList } from '@/lib/list/schema'
 import { attributeName, attributeOf } from '@/lib/reading/schema/attributes'
+import { howRead } from '@/lib/reading/rules/how-read'
 import type { ReadingEntry } from '../queries/readings'
 
 /** A line is one entry: a correction and what it superseded are lines of their own, so that a file hides nothing either. */
@@ -19,6 +20,7 @@ export const readingList = describeList<ReadingEntry>()({
       value: (entry) => (entry.isVoid ? 'void' : (entry.value ?? entry.word)),
     },
     { key: 'typed', title: 'as typed', value: (entry) => entry.typed },
+    { key: 'how', title: 'read from', isExtra: true, value: howRead },
     { key: 'by', title: 'read by', sort: 'text', value: (entry) => entry.readByName },
     {
       key: 'measured',
