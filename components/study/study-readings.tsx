@@ -10,7 +10,6 @@ import { Empty } from '@/components/ui/empty'
 import { isNarrowed } from '@/lib/list/rules'
 import type { ListQuery } from '@/lib/list/schema'
 import { grouped } from '@/lib/number/rules'
-import { howRead } from '@/lib/reading/rules/how-read'
 import { hairlineText } from '@/lib/reading/rules/layers-words'
 import type { ReadingChain, ReadingEntry, StudyReadings as Page } from '@/lib/study/queries/readings'
 import { dayIn, spokenDay } from '@/lib/study/rules/calendar'
@@ -150,7 +149,6 @@ type CellProps = {
 
 function Cell({ of, entry, isCurrent, isAmended, timeZone }: CellProps) {
   const old = isCurrent ? '' : 'line-through decoration-1 text-soft'
-  const how = howRead(entry)
   switch (of) {
     case 'jar':
       return <td className="font-mono text-14 whitespace-nowrap">{jarName(entry)}</td>
@@ -182,7 +180,6 @@ function Cell({ of, entry, isCurrent, isAmended, timeZone }: CellProps) {
       return (
         <td className="max-w-[260px] pl-6!">
           <span className={old}>{entry.typed}</span>
-          {how ? <span className="block text-13 text-soft">{how}</span> : null}
           {entry.reason ? <span className="block text-13 text-soft">because: {entry.reason}</span> : null}
           {entry.doubts.map((doubt) => (
             <span key={doubt.reason} className="block text-13 text-soft">

@@ -20,7 +20,7 @@ export const readingList = describeList<ReadingEntry>()({
       value: (entry) => (entry.isVoid ? 'void' : (entry.value ?? entry.word)),
     },
     { key: 'typed', title: 'as typed', value: (entry) => entry.typed },
-    { key: 'how', title: 'read from', isExtra: true, value: howRead },
+    { key: 'how', title: 'read from', value: howRead },
     { key: 'by', title: 'read by', sort: 'text', value: (entry) => entry.readByName },
     {
       key: 'measured',
