@@ -36,6 +36,8 @@ export default defineConfig({
     ...devices['Desktop Chrome'],
     baseURL: demoLab.url,
     viewport: { width: 1440, height: 900 },
+    // Each test is a new browser, in which the worker would fetch the whole application once more: only where it is tried.
+    serviceWorkers: 'block',
     // A trace of every page takes longer than the page; what failed is seen on its picture.
     trace: 'off',
     screenshot: 'only-on-failure',

@@ -6,6 +6,8 @@ import { expect, test } from './watch'
 // itself, and each press arrives once. One that is ended short says so before it ends.
 // A logger's file is shown with its bad row, then taken.
 
+test.use({ serviceWorkers: 'allow' })
+
 test('A half is held and ended at the board, and a logger’s file is taken', async ({
   page,
   context,

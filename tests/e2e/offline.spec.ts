@@ -10,7 +10,7 @@ import { expect, test } from './watch'
 
 const viewport = { width: 820, height: 1180 }
 const most = 20
-test.use({ viewport })
+test.use({ viewport, serviceWorkers: 'allow' })
 
 let study: WalkStudy
 test.beforeAll(async () => {

@@ -4,7 +4,7 @@ import { openAs } from './people'
 import { expect, test } from './watch'
 import type { Page } from '@playwright/test'
 
-test.use({ viewport: { width: 820, height: 1180 } })
+test.use({ viewport: { width: 820, height: 1180 }, serviceWorkers: 'allow' })
 
 type Scripts = Map<string, number>
 
