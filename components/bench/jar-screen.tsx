@@ -5,6 +5,7 @@ import type { BenchPerson } from '@/components/device/last-person'
 import { notACode, notOnDevice } from '@/components/bench/use-called-jar'
 import { OpenJar } from '@/components/bench/open-jar'
 import type { OutboxOnScreen } from '@/components/device/use-outbox'
+import { useReadDrafts } from '@/components/device/use-read-drafts'
 import { Button } from '@/components/ui/button'
 import { ErrorNote } from '@/components/ui/error-note'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
@@ -26,7 +27,9 @@ export type JarScreenProps = {
 /** One jar: what is asked of it, typed by gloved hands, judged while it is typed, kept with one press. */
 export function JarScreen({ code, onChange, ...rest }: JarScreenProps) {
   const { data: jar, error: unread, mutate } = useSWR<BenchJarPage>(benchKeys.jar(code), fetcher)
-  if (!jar)
+  // A field that is in hand before the device was read would take the place of the one that was left.
+  const isRead = useReadDrafts() !== null
+  if (!jar || !isRead)
     return (
       <div className="mx-auto flex max-w-[820px] flex-col gap-5 p-5">
         {unread ? (
