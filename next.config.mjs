@@ -10,6 +10,8 @@ const config = {
   // Writing it costs more than the next build saves.
   experimental: { turbopackFileSystemCacheForBuild: false },
   turbopack: { resolveAlias: { '@stdlib/assert-has-generator-support': './lib/science/has-generators.cjs' } },
+  // A file that opens in a tab of its own names no mark, so the browser asks for it under this address.
+  rewrites: async () => [{ source: '/favicon.ico', destination: '/mark.svg' }],
   allowedDevOrigins: ['127.0.0.1'],
   // Native or file-reading packages stay outside the bundle.
   serverExternalPackages: [
