@@ -59,18 +59,8 @@ export function ColourPanel({ jar, slot, text, verdict, read, type, onPhoto, mar
             <span className="font-700 text-alarm">{verdict.sentence}</span>
           ) : null}
         </p>
-        <FieldBand field={slot.field} now={verdict.state === 'value' ? verdict.value : null} width={440} />
-        <Button density="bench" onClick={() => setPhoto(true)}>
-          {onPhoto ? 'From a photo. Measure it again' : 'From a photo with a grey card'}
-        </Button>
-        <Checkbox
-          label="An estimate, from a photo or by eye"
-          density="bench"
-          checked={read(estimateKey) !== ''}
-          onSet={(isOn) => type(estimateKey, isOn ? 'yes' : '')}
-        />
       </div>
-      <div>
+      <div className="sm:col-start-2 sm:row-span-2 sm:row-start-1">
         <NumberPad onKey={(key) => set(at, afterKey(values[at] ?? '', key))}>
           <div className="grid grid-cols-2 gap-3">
             <PadKey
@@ -88,6 +78,18 @@ export function ColourPanel({ jar, slot, text, verdict, read, type, onPhoto, mar
             />
           </div>
         </NumberPad>
+      </div>
+      <div className="grid content-start gap-4">
+        <FieldBand field={slot.field} now={verdict.state === 'value' ? verdict.value : null} width={440} />
+        <Button density="bench" onClick={() => setPhoto(true)}>
+          {onPhoto ? 'From a photo. Measure it again' : 'From a photo with a grey card'}
+        </Button>
+        <Checkbox
+          label="An estimate, from a photo or by eye"
+          density="bench"
+          checked={read(estimateKey) !== ''}
+          onSet={(isOn) => type(estimateKey, isOn ? 'yes' : '')}
+        />
       </div>
       <Suspense fallback={null}>
         {isPhoto ? (

@@ -14,7 +14,7 @@ import { attributeName } from '@/lib/reading/schema/attributes'
 import { dayText } from '@/lib/report/rules'
 import { dayIn } from '@/lib/study/rules/calendar'
 import { writtenAs } from '@/lib/bench/rules'
-import { shownWithUnit } from '@/lib/study/rules/words'
+import { capital, shownWithUnit } from '@/lib/study/rules/words'
 
 export type JarReading = BenchJarPage['readings'][number]
 
@@ -118,7 +118,7 @@ export function DonePanel({ jar, personId, mayLog, onChange, onWalk, next, onOpe
 }
 
 function headline(jar: BenchJarPage, mayLog: boolean): string {
-  if (jar.state === 'missed') return `Not read: ${jar.missedReason ?? ''}`
+  if (jar.state === 'missed') return `Not read. ${capital(jar.missedReason ?? '')}`
   if (jar.state === 'done')
     return `Read${jar.closedBy ? ` by ${jar.closedBy.name}` : ''}${jar.closedAt ? `, ${dayText(jar.closedAt)}` : ''}`
   if (!jar.isStudyRunning) return `Study ${jar.study.code} is closed; nothing is asked of this jar.`

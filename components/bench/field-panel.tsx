@@ -32,7 +32,8 @@ export function FieldPanel({ jar, entry, hasNextJar }: Props) {
     />
   )
   const kind = here?.slot.kind
-  const hasPad = here !== undefined && kind !== 'word' && !hasOwnPanel(here.slot)
+  const hasPad = isOnKeys(entry)
+  const isWide = here !== undefined && hasOwnPanel(here.slot)
   const read = (key: string) => entry.draft.texts[key] ?? ''
   const keys = useTypedAbove(entry.at)
   return (
@@ -54,9 +55,9 @@ export function FieldPanel({ jar, entry, hasNextJar }: Props) {
             <NumberFields jar={jar} entry={entry} group={group} here={here} />
           )
         ) : (
-          <Landing key={entry.at} isWide={here !== undefined && hasOwnPanel(here.slot)}>
+          <Landing key={entry.at} isWide={isWide}>
             {kind === 'word' ? <WordPanel jar={jar} entry={entry} group={group} /> : null}
-            {here && hasOwnPanel(here.slot) ? (
+            {isWide ? (
               <KindPanel
                 {...{ jar, slot: here.slot, text: here.text, verdict: here.verdict, read }}
                 type={entry.type}
@@ -75,7 +76,7 @@ export function FieldPanel({ jar, entry, hasNextJar }: Props) {
         )}
         <div
           ref={keys}
-          className="sticky bottom-0 -mx-4 self-end bg-typed px-4 pb-3 pt-2 sm:mx-0 sm:px-0 sm:col-start-2 [@media(max-height:640px)]:static"
+          className={`sticky bottom-0 -mx-4 self-end bg-typed px-4 pb-3 pt-2 sm:mx-0 sm:px-0 [@media(max-height:640px)]:static ${isWide ? 'sm:col-span-2 sm:[&>*]:ml-auto sm:[&>*]:max-w-[324px]' : 'sm:col-start-2'}`}
         >
           {here && hasPad ? (
             <NumberPad
@@ -91,6 +92,12 @@ export function FieldPanel({ jar, entry, hasNextJar }: Props) {
       </div>
     </div>
   )
+}
+
+/** Whether what is in hand is typed on the docked keys. */
+export function isOnKeys({ tabs, at }: Pick<JarEntry, 'tabs' | 'at'>): boolean {
+  const here = tabs.find((tab) => tab.key === at)
+  return here !== undefined && here.slot.kind !== 'word' && !hasOwnPanel(here.slot)
 }
 
 /** The focus comes along where no number is typed, so that the next key is for what is seen. */

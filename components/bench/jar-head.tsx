@@ -14,7 +14,7 @@ export function JarHead({
   onWalk: () => void
 }) {
   return (
-    <header className="flex items-center gap-3 max-sm:[&_[data-bracket]]:hidden px-4 py-3 sm:gap-5 sm:px-5 sm:py-4">
+    <header className="flex items-center gap-3 max-lg:[&_[data-bracket]]:hidden px-4 py-3 sm:gap-5 sm:px-5 sm:py-4">
       <button
         type="button"
         aria-label="Back to the walk"

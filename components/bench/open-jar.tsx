@@ -2,7 +2,7 @@
 
 import { useState } from 'react'
 import { DonePanel } from '@/components/bench/done-panel'
-import { FieldPanel } from '@/components/bench/field-panel'
+import { FieldPanel, isOnKeys } from '@/components/bench/field-panel'
 import { JarHead } from '@/components/bench/jar-head'
 import { JarNotices } from '@/components/bench/jar-notices'
 import { JarQuestions } from '@/components/bench/jar-questions'
@@ -86,8 +86,13 @@ export function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }
                 <OverviewPanel jar={jar} entry={entry} />
               )}
             </div>
-            <SlotTabs entry={entry} hasPhotos={person.mayAddPhotos} />
-            <FieldPanel jar={jar} entry={entry} hasNextJar={next !== null} />
+            {/* Upright, the keys stay at the tablet's edge whatever a caution or a notice takes above them. */}
+            <div
+              className={`flex flex-1 flex-col beside:contents ${isOnKeys(entry) ? 'sm:sticky sm:bottom-0 sm:bg-ground' : ''}`}
+            >
+              <SlotTabs entry={entry} hasPhotos={person.mayAddPhotos} />
+              <FieldPanel jar={jar} entry={entry} hasNextJar={next !== null} />
+            </div>
           </div>
         </>
       ) : null}

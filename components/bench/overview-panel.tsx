@@ -1,3 +1,4 @@
+import { useEffect, useRef } from 'react'
 import { LastValues } from '@/components/bench/last-values'
 import type { JarEntry } from '@/components/bench/use-jar-entry'
 import { bandText } from '@/components/bench/verdict'
@@ -9,9 +10,14 @@ import type { BenchJarPage } from '@/lib/bench/queries/jar'
 export function OverviewPanel({ jar, entry }: { jar: BenchJarPage; entry: JarEntry }) {
   const { at } = entry
   const tabs = entry.groups.map((group) => group.find((tab) => tab.key === at) ?? group[0]!)
+  const here = useRef<HTMLLIElement>(null)
+  useEffect(() => {
+    // In braces: newer browsers answer with a promise, which is no clean-up.
+    here.current?.scrollIntoView({ block: 'nearest' })
+  }, [at])
   return (
     <div className="hidden gap-x-6 gap-y-3 px-7 pt-3 sm:grid sm:grid-cols-[140px_minmax(0,1fr)] beside:grid-cols-[96px_minmax(0,1fr)] beside:gap-x-4">
-      <div>
+      <div className="beside:[&_svg]:h-auto beside:[&_svg]:w-full">
         <JarGlyph
           height={200}
           kind="measuring"
@@ -21,10 +27,11 @@ export function OverviewPanel({ jar, entry }: { jar: BenchJarPage; entry: JarEnt
         />
         {jar.asks === 'repeat' ? <p className="mt-2 text-17">A repeat on a spare jar.</p> : null}
       </div>
-      <div className="min-w-0">
+      {/* Standing upright, a tablet has room for four rows above the keys; the one in hand is among them. */}
+      <div className="min-w-0 sm:max-h-[264px] sm:overflow-y-auto beside:max-h-none beside:overflow-visible">
         <ul>
           {tabs.map(({ key, slot, verdict }) => (
-            <li key={key} className="border-b border-hair">
+            <li key={key} ref={key === at ? here : null} className="border-b border-hair">
               <button
                 type="button"
                 onClick={() => entry.goTo(key)}

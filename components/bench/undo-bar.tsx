@@ -28,15 +28,17 @@ function Bar({ save, outbox, onOpen, onChange }: Props & { save: LastSave }) {
   const [isBusy, setBusy] = useState(false)
   const { jar, repeats } = save
   const isOver = left <= 0
+  const waiting = outbox.items.find((item) => isKeptJar(item) && item.about.pullJarId === jar.pullJarId)
+  // What was not taken is decided in the tray.
+  const isRefused = waiting !== undefined && waiting.refusal !== null
 
   useEffect(() => {
-    if (isOver && repeats.length === 0 && says === '') setLastSave(null)
-  }, [isOver, repeats.length, says])
+    if (isRefused || (isOver && repeats.length === 0 && says === '')) setLastSave(null)
+  }, [isRefused, isOver, repeats.length, says])
 
   async function undo() {
     setBusy(true)
     try {
-      const waiting = outbox.items.find((item) => isKeptJar(item) && item.about.pullJarId === jar.pullJarId)
       if (waiting) await outbox.drop(waiting)
       else await send(pullKeys.undo(jar.pullJarId), 'POST', { readings: save.readings })
       // A reading's id belongs to what was voided; what is typed on gets ids of its own.
@@ -58,10 +60,10 @@ function Bar({ save, outbox, onOpen, onChange }: Props & { save: LastSave }) {
       <div className="mx-auto flex max-w-[1440px] flex-wrap items-center gap-x-5 gap-y-1 px-4 sm:px-7">
         <p role="status" className="min-w-0 flex-1 py-2 text-18">
           <b>
-            {save.isKeptHere ? 'Kept on this tablet: ' : 'Kept: '}
+            {save.isKeptHere && waiting ? 'Kept on this tablet: ' : 'Kept: '}
             {jar.name}
           </b>
-          {save.isKeptHere ? '. It goes out when the network is back.' : ''}
+          {save.isKeptHere && waiting ? '. It goes out when the network is back.' : ''}
           {says ? <span className="block">{says}</span> : null}
           {repeats.map((repeat) => (
             <span key={repeat.pullJarId} className="block">

@@ -13,6 +13,7 @@ import type { OutboxOnScreen } from './use-outbox'
 export function OutboxDialog({ outbox, onClose }: { outbox: OutboxOnScreen; onClose: () => void }) {
   const { items, isOnline, isSignedOut, flush } = outbox
   const [isBusy, setBusy] = useState(false)
+  const refused = items.filter((item) => item.refusal !== null).length
 
   async function sendNow() {
     setBusy(true)
@@ -29,14 +30,14 @@ export function OutboxDialog({ outbox, onClose }: { outbox: OutboxOnScreen; onCl
       onClose={onClose}
       width={720}
       density="bench"
-      title={items.length === 0 ? 'Everything is on the server' : titleOf(items.length)}
-      sentence={sentenceOf(isOnline, isSignedOut, items.length)}
+      title={items.length === 0 ? 'Everything is on the server' : titleOf(items.length, refused)}
+      sentence={sentenceOf(isOnline, isSignedOut, items.length, refused)}
       acts={
         <>
           <Button density="bench" onClick={onClose}>
             Close
           </Button>
-          {items.length > 0 || isSignedOut ? (
+          {items.length > refused || isSignedOut ? (
             <Button density="bench" kind="primary" busy={isBusy} onClick={() => void sendNow()}>
               {isSignedOut ? 'Sign in and send' : 'Send now'}
             </Button>
@@ -55,12 +56,16 @@ export function OutboxDialog({ outbox, onClose }: { outbox: OutboxOnScreen; onCl
   )
 }
 
-function titleOf(count: number): string {
+function titleOf(count: number, refused: number): string {
+  if (refused === count)
+    return `${countWord(count, true)} ${count === 1 ? 'entry was' : 'entries were'} not taken`
   return `${countWord(count, true)} ${count === 1 ? 'entry is' : 'entries are'} only on this tablet`
 }
 
-function sentenceOf(isOnline: boolean, isSignedOut: boolean, count: number): string {
+function sentenceOf(isOnline: boolean, isSignedOut: boolean, count: number, refused: number): string {
   if (count === 0) return 'Nothing waits here.'
+  if (refused === count && !isSignedOut)
+    return `${count === 1 ? 'It stays' : 'They stay'} on this tablet until you have said what becomes of ${count === 1 ? 'it' : 'them'}.`
   const goes = count === 1 ? 'It goes out' : 'They go out'
   if (isSignedOut) return `You were signed out. ${goes} once you have signed in again.`
   if (!isOnline)

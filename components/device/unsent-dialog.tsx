@@ -13,15 +13,17 @@ export function UnsentDialog({ count, isLeaving, onLeave, onClose }: Props) {
   return (
     <Dialog
       isOpen
+      density="bench"
       onClose={onClose}
       title={`${countWord(count, true)} ${count === 1 ? 'entry is' : 'entries are'} still only on this device`}
       sentence={`${count === 1 ? 'It stays' : 'They stay'} here, shown to nobody but you, until you sign in again on this device.`}
       acts={
         <>
-          <Button kind="danger" busy={isLeaving} onClick={onLeave}>
+          <Button density="bench" kind="danger" busy={isLeaving} onClick={onLeave}>
             Sign out, leave {count === 1 ? 'it' : 'them'} here
           </Button>
           <Button
+            density="bench"
             kind="primary"
             onClick={() => {
               void flush()

@@ -92,7 +92,7 @@ function NotTaken({ item, outbox, onLeave }: Props) {
           />
         </dl>
       )}
-      <p className="flex flex-wrap gap-[var(--control-gap)]">
+      <p className="flex flex-wrap items-start gap-[var(--control-gap)]">
         {isBetweenTwo ? (
           <Button
             density="bench"

@@ -76,7 +76,7 @@ export function PlanGrid({ plan, reads, onToggle }: Props) {
                   />
                 </td>
               ))}
-              <td className="pl-4 align-bottom text-14 whitespace-nowrap text-soft">
+              <td className="min-w-[150px] pl-4 align-bottom text-14 text-soft xl:whitespace-nowrap">
                 {jarsText(plan, station)}
               </td>
             </tr>

@@ -107,7 +107,7 @@ export function OutsideForm({ code, batches, old, onClose, onDone }: Props) {
         <Field label="Report number" {...part('reportNumber')} />
         <Field label="Day of the report" type="date" {...part('reportedOn')} />
         <div className="grid content-start gap-1.5">
-          <span className="text-13">Its document, PDF or picture</span>
+          <span className="text-13 font-650">Its document, PDF or picture</span>
           <input
             ref={input}
             type="file"
