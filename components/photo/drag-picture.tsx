@@ -52,7 +52,7 @@ export function DragPicture({ copy, alt, lines, axisX, tiltDegrees, picked, onPi
       cursor="cursor-ns-resize"
       loupeMark={
         <span
-          className="absolute inset-x-0 block border-t border-ink outline outline-1 outline-white"
+          className="absolute inset-x-0 block border-t border-[#0E1D17] outline outline-1 outline-white"
           style={{ top: loupePx / 2 - 3, transform: `rotate(${-tiltDegrees}deg)` }}
         />
       }

@@ -58,7 +58,7 @@ export function MarkPicture({ copy, children, at, finger, loupeMark, cursor, onD
       {children}
       <div
         aria-hidden
-        className={`pointer-events-none absolute overflow-hidden rounded-full border-[3px] border-ink bg-ink ${isRight ? 'right-2' : 'left-2'} ${isLow ? 'bottom-2' : 'top-2'}`}
+        className={`pointer-events-none absolute overflow-hidden rounded-full border-[3px] border-[#0E1D17] bg-[#0E1D17] ${isRight ? 'right-2' : 'left-2'} ${isLow ? 'bottom-2' : 'top-2'}`}
         style={{
           width: loupePx,
           height: loupePx,
@@ -76,7 +76,8 @@ export function MarkPicture({ copy, children, at, finger, loupeMark, cursor, onD
 
 /** Hairs that cross where a point is being set. */
 export function LoupeCross() {
-  const hair = 'absolute block bg-ink outline outline-1 outline-white'
+  // A photo is as light in the dark, so that what is drawn on it does not change with the theme.
+  const hair = 'absolute block bg-[#0E1D17] outline outline-1 outline-white'
   return (
     <>
       <span className={`${hair} inset-x-0 h-px`} style={{ top: loupePx / 2 - 3 }} />
