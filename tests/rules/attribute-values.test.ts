@@ -118,6 +118,13 @@ describe('separation', () => {
     expect(layer.value).toBe(1.25)
     expect(layer.detail).not.toHaveProperty('isUnderRuler')
     expect(read('separation', 'x', {}, { topMm: 0, bottomMm: 0 }).detail).not.toHaveProperty('isUnderRuler')
+    // The sum counts: two layers thinner than the ruler's millimetre may be more than 1 mm of 40 together.
+    const both = read('separation', 'x', {}, { topMm: 0.3, bottomMm: 0.8 })
+    expect(both.value).toBeCloseTo(2.75, 10)
+    expect(both.detail).not.toHaveProperty('isUnderRuler')
+    expect(read('separation', 'x', {}, { topMm: 0.2, bottomMm: 0.6 }).detail).toHaveProperty('isUnderRuler')
+    const hairlines = read('separation', 'x', {}, { isTopHairline: true, isBottomHairline: true })
+    expect(hairlines.detail).toHaveProperty('isUnderRuler')
     const cream = read('separation', 'x', {}, { topMm: 0, bottomMm: 2, creamMm: 10 })
     expect(cream).toMatchObject({ value: 5, detail: { creamPercent: 25 } })
     expect(refusal(() => read('separation', 'x', {}, { topMm: 0, bottomMm: 35, creamMm: 10 }))).toContain(

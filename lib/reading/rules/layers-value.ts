@@ -1,5 +1,5 @@
 import { ScienceError } from '@/lib/science/guard'
-import { separation } from '@/lib/science/separation'
+import { separation, separationDetectionLimit } from '@/lib/science/separation'
 import { separationOnPhoto } from './photo-lines'
 import { percentOf } from '@/lib/science/percent'
 import {
@@ -62,7 +62,9 @@ export function layersValue(entry: TypedEntry, { jar, planned }: ValueContext): 
     const { percent, topPercent, bottomPercent } = photoLines
       ? separationOnPhoto(photoLines, heights)
       : separation(heights)
-    const isUnderRuler = !photoLines && percent > 0 && topMm < rulerMm && bottomMm < rulerMm
+    const isSeenOnly = (isTopHairline ?? topMm === 0) && (isBottomHairline ?? bottomMm === 0)
+    const isUnderRuler =
+      !photoLines && percent > 0 && (isSeenOnly || percent < separationDetectionLimit(totalMm, rulerMm))
     return {
       value: computed(percent),
       word: null,
@@ -70,7 +72,7 @@ export function layersValue(entry: TypedEntry, { jar, planned }: ValueContext): 
         ...entry.detail,
         ...{ topMm, bottomMm, totalMm, topPercent, bottomPercent },
         ...(creamMm === undefined ? {} : { creamPercent: computed(percentOf(creamMm, totalMm)) }),
-        // A layer thinner than the ruler tells is a hairline: more than none, and no number.
+        // What cannot be told from none with the ruler is a hairline: more than none, and no number.
         ...(isUnderRuler ? { isUnderRuler, rulerMm } : {}),
       },
     }
