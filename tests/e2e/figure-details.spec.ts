@@ -1,7 +1,7 @@
-import AxeBuilder from '@axe-core/playwright'
 import type { Locator, Page } from '@playwright/test'
 import { findTopic } from '@/lib/science/calc/topics'
 import { markWords } from '@/lib/science/methods/method'
+import { expectAxeClean } from './axe'
 import { openAs } from './people'
 import { expect, test } from './watch'
 
@@ -26,13 +26,6 @@ async function recheck(panel: Locator): Promise<Record<string, unknown>> {
   return topic.run(JSON.parse((await input.textContent())!)) as Record<string, unknown>
 }
 
-async function expectNoFindings(page: Page) {
-  const { violations } = await new AxeBuilder({ page }).setLegacyMode().include('[role=dialog]').analyze()
-  expect(violations.map(({ id, nodes }) => ({ id, at: nodes.map((node) => node.target.join(' ')) }))).toEqual(
-    [],
-  )
-}
-
 /** As the panel writes it, thin gaps and true minus aside. */
 const plain = (text: string | null) => (text ?? '').replaceAll('\u2009', '').replaceAll('\u2212', '-')
 
@@ -46,7 +39,7 @@ test('formula: the internal phase is made again to the last digit', async ({ pag
   await expect(panel.getByRole('list', { name: 'Sources' })).toContainText('handbook')
   const { internalVolumePercent } = await recheck(panel)
   expect(plain(await panel.textContent())).toContain(`${String(internalVolumePercent)} %`)
-  await expectNoFindings(page)
+  await expectAxeClean(page, 'the panel', { within: '[role=dialog]' })
 
   // By keyboard: Escape puts it away, and the figure has the focus again.
   await page.keyboard.press('Escape')
@@ -69,7 +62,7 @@ test('curves: a series names its band, slope, repeatability and rules, and calc 
   expect(text.toLowerCase()).toContain(String(standing))
   expect(text).toContain(String(slope))
   expect(text).toContain(`${String(100 * Number(used))} %`)
-  await expectNoFindings(page)
+  await expectAxeClean(page, 'the panel', { within: '[role=dialog]' })
 })
 
 test('flag: the rule stands with its thresholds and the numbers of its day', async ({ page }) => {
@@ -82,7 +75,7 @@ test('flag: the rule stands with its thresholds and the numbers of its day', asy
   const panel = await ask(page, /^What flag \d+ is computed from$/)
   await expect(panel).toContainText('Found and kept on')
   await expect(panel).toContainText('npm run simulate')
-  await expectNoFindings(page)
+  await expectAxeClean(page, 'the panel', { within: '[role=dialog]' })
 })
 
 test('case: months of an attribute with model, tests, bound and cap, made again from the frozen input', async ({
@@ -97,7 +90,7 @@ test('case: months of an attribute with model, tests, bound and cap, made again 
   const text = plain(await panel.textContent())
   expect(text).toContain(model)
   expect(text).toContain(String(batches[0]!.slope))
-  await expectNoFindings(page)
+  await expectAxeClean(page, 'the panel', { within: '[role=dialog]' })
 
   await page.keyboard.press('Escape')
   const cap = await ask(page, /^What \d+ months is computed from$/)

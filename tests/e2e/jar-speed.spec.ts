@@ -1,5 +1,5 @@
-import AxeBuilder from '@axe-core/playwright'
 import type { Locator, Page } from '@playwright/test'
+import { expectAxeClean } from './axe'
 import { codeOf, openStation, readBalance, readLast } from './bench'
 import { openAs } from './people'
 import { photo } from './picture'
@@ -119,7 +119,7 @@ test('A measuring jar with pH and viscosity takes at most 6; its keys are in vie
   await expect(page.getByRole('tab', { name: /^Feel/ })).toHaveAttribute('aria-selected', 'true')
   await count.press(page.getByRole('button', { name: /^Same as last: / }))
   await page.evaluate(() => document.documentElement.setAttribute('data-theme', 'dim'))
-  expect((await new AxeBuilder({ page }).analyze()).violations).toEqual([])
+  await expectAxeClean(page, 'dim')
   await count.press(page.getByRole('button', { name: /^Keep/ }))
   await expect(page.getByText(/^Kept: /)).toBeVisible()
   await expect(page, 'the next jar is open').not.toHaveURL(new RegExp(`${code}$`))

@@ -1,6 +1,6 @@
-import AxeBuilder from '@axe-core/playwright'
 import type { Locator, Page } from '@playwright/test'
 import { demoPassword } from '@/lib/lab/rules'
+import { expectAxeClean } from './axe'
 import { codeOf, readBalance } from './bench'
 import { expect, test } from './watch'
 
@@ -103,7 +103,7 @@ test('By keyboard alone: Control and K find a batch and a page by part of their 
   await page.keyboard.type('n86-')
   const batch = page.getByRole('option', { name: /^batch N86-1/ })
   await expect(batch).toHaveAttribute('aria-selected', 'true')
-  expect((await new AxeBuilder({ page }).analyze()).violations).toEqual([])
+  await expectAxeClean(page, 'finding')
   await page.keyboard.press('Enter')
   await expect(page).toHaveURL(/\/batches\/N86-1$/)
   await expect(box).toBeHidden()

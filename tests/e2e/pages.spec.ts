@@ -1,7 +1,7 @@
-import AxeBuilder from '@axe-core/playwright'
 import type { Page } from '@playwright/test'
 import type { DemoPerson } from '@/fixtures/demo/people'
 import { filesNamed } from '../support/walk'
+import { expectAxeClean } from './axe'
 import { openAs } from './people'
 import { expect, test } from './watch'
 
@@ -92,13 +92,13 @@ for (const visit of visits) {
     await go(page, visit)
     await expect(page.getByRole('heading', { level: 1 })).toHaveCount(1)
     await expect(page.getByRole('main')).toHaveCount(1)
-    expect(await findings(page), 'light').toEqual([])
+    await expectAxeClean(page, 'light')
     // The themes differ in colours alone.
     await setTheme(page, 'dark')
-    expect(await findings(page, ['color-contrast', 'link-in-text-block']), 'dark').toEqual([])
+    await expectAxeClean(page, 'dark', { rules: ['color-contrast', 'link-in-text-block'] })
     if (!visit.phone) return
     await page.setViewportSize({ width: 390, height: 844 })
-    expect(await findings(page), 'dark, on a phone').toEqual([])
+    await expectAxeClean(page, 'dark, on a phone')
     expect(await overflow(page), 'nothing sticks out sideways').toBeLessThanOrEqual(0)
   })
 }
@@ -129,19 +129,6 @@ async function dueJar(page: Page, asks: string): Promise<string> {
     stations: { jars: { code: string; asks: string; state: string }[] }[]
   }
   return stations.flatMap(({ jars }) => jars).find((jar) => jar.asks === asks && jar.state === 'due')!.code
-}
-
-async function findings(page: Page, rules?: string[]) {
-  // Without frames there is nothing to gather in a page of its own.
-  const axe = new AxeBuilder({ page }).setLegacyMode()
-  // What is well is not asked for in full.
-  const { violations } = await axe
-    .options({ resultTypes: ['violations'], ...(rules ? { runOnly: rules } : {}) })
-    .analyze()
-  return violations.map(({ id, nodes }) => ({
-    id,
-    at: nodes.map((node) => `${node.target.join(' ')}: ${node.failureSummary}`),
-  }))
 }
 
 /** As the person's menu does it. */
