@@ -34,7 +34,8 @@ function inTurn<T>(task: object): Promise<T> {
 
 function work<T>(task: object): Promise<T> {
   return new Promise((resolve, reject) => {
-    const worker = new Worker(workerFile, { workerData: task })
+    // Plain JavaScript: the loader that the process itself was started with would only be read once more, for each picture.
+    const worker = new Worker(workerFile, { workerData: task, execArgv: [] })
     const timer = setTimeout(() => {
       void worker.terminate()
       reject(new Error(`The picture took longer than ${longestMs / 1000} s.`))
