@@ -152,6 +152,8 @@ function post(item, personId) {
   const form = new FormData()
   for (const [name, value] of Object.entries(body)) form.append(name, String(value))
   form.append('file', item.file, item.file.name ?? 'photo')
+  // Made by the page that kept the photo, where it came to it.
+  if (item.copy) form.append('copy', item.copy, 'copy.jpg')
   return fetch(item.url, { method: item.method, headers, body: form })
 }
 

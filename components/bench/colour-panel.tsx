@@ -1,15 +1,15 @@
-import { lazy, Suspense, useState } from 'react'
+import { Suspense, useState } from 'react'
 import { besideKey } from '@/components/bench/kind-entry'
 import type { PanelProps } from '@/components/bench/kind-panel'
 import { PanelHead } from '@/components/bench/panel-head'
 import { FieldBand } from '@/components/bench/field-band'
+import { ColourOnPhoto } from '@/components/photo/later'
 import { Button } from '@/components/ui/button'
 import { Checkbox } from '@/components/ui/checkbox'
+import { ComingDialog } from '@/components/ui/coming'
 import { afterKey, NumberPad } from '@/components/ui/number-pad'
 import { labIn } from '@/lib/reading/rules/colour-value'
 import { readTyped } from '@/lib/reading/schema/typed'
-
-const ColourOnPhoto = lazy(() => import('@/components/photo/colour-on-photo'))
 
 const parts = ['L*', 'a*', 'b*'] as const
 const blank = '?'
@@ -91,7 +91,16 @@ export function ColourPanel({ jar, slot, text, verdict, read, type, onPhoto, mar
           onSet={(isOn) => type(estimateKey, isOn ? 'yes' : '')}
         />
       </div>
-      <Suspense fallback={null}>
+      <Suspense
+        fallback={
+          <ComingDialog
+            what="What tells a colour from a photo"
+            title="Colour from a photo"
+            density="bench"
+            onClose={() => setPhoto(false)}
+          />
+        }
+      >
         {isPhoto ? (
           <ColourOnPhoto
             jar={jar}

@@ -1,13 +1,13 @@
-import { lazy, Suspense, useState } from 'react'
+import { Suspense, useState } from 'react'
 import type { PanelProps } from '@/components/bench/kind-panel'
 import { PanelHead } from '@/components/bench/panel-head'
 import { FieldBand } from '@/components/bench/field-band'
+import { DropsOnPhoto } from '@/components/photo/later'
 import { Button } from '@/components/ui/button'
+import { ComingDialog } from '@/components/ui/coming'
 import { TextArea } from '@/components/ui/text-area'
 import { dropCount, dropsOf, readDrops } from '@/lib/batch/rules/droplets'
 import { dropletMeasureWords } from '@/lib/protocol/rules/words'
-
-const DropsOnPhoto = lazy(() => import('@/components/photo/drops-on-photo'))
 
 /** Diameters typed or pasted, one for each drop or with how many there were, and what they come to. */
 export function DropletsPanel({ jar, slot, text, verdict, type, onPhoto, markOnPhoto }: PanelProps) {
@@ -44,7 +44,16 @@ export function DropletsPanel({ jar, slot, text, verdict, type, onPhoto, markOnP
         ) : null}
       </p>
       <FieldBand field={slot.field} now={verdict.state === 'value' ? verdict.value : null} width={440} />
-      <Suspense fallback={null}>
+      <Suspense
+        fallback={
+          <ComingDialog
+            what="What measures drops on a photo"
+            title="Drops on a photo"
+            density="bench"
+            onClose={() => setPhoto(false)}
+          />
+        }
+      >
         {isPhoto ? (
           <DropsOnPhoto
             jar={jar}

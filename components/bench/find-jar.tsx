@@ -1,15 +1,14 @@
 'use client'
 
-import { lazy, Suspense, useState, type FormEvent } from 'react'
+import { Suspense, useState, type FormEvent } from 'react'
+import { LabelCamera } from '@/components/bench/later'
 import { useCalledJar } from '@/components/bench/use-called-jar'
 import { Button } from '@/components/ui/button'
+import { Coming } from '@/components/ui/coming'
 import { Dialog } from '@/components/ui/dialog'
 import { Field } from '@/components/ui/field'
 import type { Bench } from '@/lib/bench/queries/today'
 import { readJarCode } from '@/lib/jar/rules/code'
-
-/** Camera and decoder come only to those who scan. */
-const LabelCamera = lazy(() => import('@/components/bench/label-camera'))
 
 type Props = {
   bench: Bench
@@ -27,7 +26,7 @@ export function FindJar({ bench, isScanning, onOpen, onClose }: Props) {
   return (
     <Dialog isOpen onClose={onClose} title={isScanning ? 'Scan a label' : 'Which jar'} density="bench">
       {isScanning ? (
-        <Suspense fallback={<p role="status">The camera is starting.</p>}>
+        <Suspense fallback={<Coming what="What reads labels" />}>
           <LabelCamera
             onRead={(read) => {
               setText(readJarCode(read) ?? read.slice(0, 40))

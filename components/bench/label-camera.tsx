@@ -15,7 +15,7 @@ type Torch = { isOn: boolean; set: (isOn: boolean) => Promise<void> }
 const searchedPx = 800
 const pauseMs = 120
 
-/** The tablet's camera, looking for the square of a label. Loaded only when somebody scans. */
+/** The tablet's camera, looking for the square of a label. Loaded after the Bench stands. */
 export default function LabelCamera({ onRead }: Props) {
   const video = useRef<HTMLVideoElement>(null)
   const [state, setState] = useState<State>({ kind: 'starting' })

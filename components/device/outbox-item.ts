@@ -34,6 +34,8 @@ export type OutboxItem = {
   /** Beside a file: the other fields of its form. */
   body: Record<string, unknown>
   file: Blob | null
+  /** Beside a photo of a jar, as soon as it is made: to measure on. */
+  copy?: Blob
   about: About
   /** What stood in the form, so that it can be taken back there. */
   draft: { key: string; value: unknown } | null

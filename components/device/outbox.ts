@@ -12,6 +12,7 @@ import {
   type OutboxItem,
 } from './outbox-item'
 import { oneTabAtATime } from './one-tab'
+import { keepCopies } from './photo-copies'
 import { postItem } from './post-item'
 import type { Store } from './store'
 import type { Tabs } from './tabs'
@@ -51,6 +52,7 @@ export function makeOutbox(personId: string, store: Store, drafts: Drafts, tabs:
   const sentListeners = new Set<(item: OutboxItem, answer: unknown) => void>()
   const waiting = makeWaiting((awaited) => set({ awaited }))
   const alone = oneTabAtATime(store)
+  const copies = keepCopies(store)
   const running = new Map<Lane, Promise<void>>()
   const faults = new Map<string, number>()
   let failures = 0
@@ -120,7 +122,8 @@ export function makeOutbox(personId: string, store: Store, drafts: Drafts, tabs:
 
   /** False where what follows must wait as well. */
   async function sendOne(item: OutboxItem): Promise<boolean> {
-    const attempt = () => postItem(item, personId, (percent) => showProgress(item.id, percent))
+    const attempt = async () =>
+      postItem(await copies.beside(item), personId, (percent) => showProgress(item.id, percent))
     showProgress(item.id, 0)
     try {
       const answer = await (waiting.isAwaited(item.id) ? askingWho(item, attempt) : attempt())
@@ -165,6 +168,7 @@ export function makeOutbox(personId: string, store: Store, drafts: Drafts, tabs:
 
   async function sent(item: OutboxItem, answer: unknown): Promise<void> {
     await store.dropItem(item)
+    copies.forget(item.id)
     if (item.draft) {
       const { key, value } = item.draft
       // What was typed on since is a new entry's.
@@ -173,7 +177,8 @@ export function makeOutbox(personId: string, store: Store, drafts: Drafts, tabs:
     await changed()
     waiting.settle(item.id, { how: 'sent', answer })
     sentListeners.forEach((hear) => hear(item, answer))
-    tabs.tell('sent', JSON.stringify({ item: { ...item, file: null }, answer }))
+    const { copy: _, ...rest } = item
+    tabs.tell('sent', JSON.stringify({ item: { ...rest, file: null }, answer }))
   }
 
   /** Others only had the jar open meanwhile: nothing stands against it, so it goes out at the jar as it is now. */
@@ -250,9 +255,12 @@ export function makeOutbox(personId: string, store: Store, drafts: Drafts, tabs:
       } catch {
         // A full or forbidden store: sent all the same, only not kept for later.
         waiting.drop(item.id)
-        return { how: 'sent', answer: (await postItem(item, personId, () => undefined)) as T }
+        const whole = await copies.beside(item)
+        copies.forget(item.id)
+        return { how: 'sent', answer: (await postItem(whole, personId, () => undefined)) as T }
       }
       await changed()
+      void copies.beside(item)
       const isHeld = !mayGoOut(state.items, item)
       if (isHeld || (failures > 0 && !navigator.onLine)) waiting.settle(item.id, { how: 'kept' })
       else void run(laneOf(item))

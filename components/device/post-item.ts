@@ -1,5 +1,4 @@
 import { readAnswer, send, unreachable } from '@/lib/http/fetcher'
-import { photoKeys } from '@/lib/photo/keys'
 import { percentOf } from '@/lib/science/percent'
 import type { OutboxItem } from './outbox-item'
 
@@ -24,18 +23,8 @@ export function postItem(
   })
 }
 
-/** To measure on, beside the photo. Null where the browser cannot read it: the server says what is wrong with it. */
-async function copyOf(photo: Blob): Promise<Blob | null> {
-  try {
-    const { measuringCopy } = await import('@/components/photo/measuring-copy')
-    return (await measuringCopy(photo)).blob
-  } catch {
-    return null
-  }
-}
-
 /** As a form, from its start at each attempt; fetch tells nothing of how far it is. */
-async function postFile(
+function postFile(
   item: OutboxItem,
   file: Blob,
   personId: string,
@@ -44,8 +33,7 @@ async function postFile(
   const form = new FormData()
   for (const [name, value] of Object.entries(item.body)) form.append(name, String(value))
   form.append('file', file, file instanceof File ? file.name : 'photo')
-  const copy = item.url === photoKeys.add ? await copyOf(file) : null
-  if (copy) form.append('copy', copy, 'copy.jpg')
+  if (item.copy) form.append('copy', item.copy, 'copy.jpg')
   return new Promise<unknown>((resolve, reject) => {
     const request = new XMLHttpRequest()
     let stalled = setTimeout(() => request.abort(), stalledMs)

@@ -65,7 +65,17 @@ export function openStore(personId: string) {
     async changeItem(item: OutboxItem): Promise<void> {
       const { transaction } = await change('outbox')
       const rows = transaction.objectStore('outbox')
-      if (await rows.getKey(item.place!)) await rows.put(item)
+      const now = await rows.get(item.place!)
+      if (now) await rows.put(now.copy ? { copy: now.copy, ...item } : item)
+      await transaction.done
+    },
+
+    /** Beside its photo, where that still waits. */
+    async keepCopy(id: string, copy: Blob): Promise<void> {
+      const { transaction } = await change('outbox')
+      const rows = transaction.objectStore('outbox')
+      const now = (await rows.getAll()).find((one) => one.id === id)
+      if (now) await rows.put({ ...now, copy })
       await transaction.done
     },
 

@@ -90,14 +90,37 @@ export default function Camera({ ghost, onTake, onClose }: Props) {
       </Dialog>
     )
   return (
-    <Dialog isOpen onClose={onClose} title="Take a photo" density="bench" width={900}>
-      <div className="relative overflow-hidden border-2 border-ink bg-ink">
+    <Dialog
+      isOpen
+      onClose={onClose}
+      title="Take a photo"
+      density="bench"
+      width={900}
+      fills
+      acts={
+        <>
+          <Button density="bench" onClick={onClose}>
+            Leave
+          </Button>
+          <Button
+            density="bench"
+            kind="primary"
+            busy={state.kind === 'taking'}
+            {...(state.kind === 'starting' ? { why: 'The camera is starting.' } : {})}
+            onClick={() => void take()}
+          >
+            Take it
+          </Button>
+        </>
+      }
+    >
+      <div className="relative min-h-0 flex-1 overflow-hidden border-2 border-ink bg-ink">
         <video
           ref={video}
           muted
           playsInline
           aria-label="What the camera sees"
-          className="block max-h-[58dvh] w-full object-contain"
+          className="absolute inset-0 h-full w-full object-contain"
         />
         {ghost ? (
           // eslint-disable-next-line @next/next/no-img-element -- served through a permission check
@@ -132,20 +155,6 @@ export default function Camera({ ghost, onTake, onClose }: Props) {
           <span className="w-14 text-right">{strength} %</span>
         </label>
       ) : null}
-      <div className="flex flex-wrap justify-end gap-3">
-        <Button density="bench" onClick={onClose}>
-          Leave
-        </Button>
-        <Button
-          density="bench"
-          kind="primary"
-          busy={state.kind === 'taking'}
-          {...(state.kind === 'starting' ? { why: 'The camera is starting.' } : {})}
-          onClick={() => void take()}
-        >
-          Take it
-        </Button>
-      </div>
     </Dialog>
   )
 }

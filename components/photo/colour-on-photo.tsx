@@ -9,8 +9,10 @@ import type { PhotoColourOfReading } from '@/lib/reading/schema/photo-colour'
 import type { Lab } from '@/lib/science/colour'
 import { ScienceError } from '@/lib/science/guard'
 import { patchOf, type Square } from '@/lib/science/patch'
-import { colourByGrey, greyCardL } from '@/lib/science/photo-colour'
-import { MarkDialog, type OpenCopy } from './mark-dialog'
+import { colourByGrey } from '@/lib/science/photo-colour'
+import { useGreyCard } from './grey-card'
+import { MarkDialog, type MarkedPhoto, type OpenCopy } from './mark-dialog'
+import { MarkTable } from './mark-table'
 import { LoupeCross, MarkPicture, type Place } from './mark-picture'
 import { MovePad, moveOfKey, Nudge } from './nudge'
 import { PhotoSquares } from './photo-squares'
@@ -36,22 +38,22 @@ export default function ColourOnPhoto({ jar, onUse, onClose }: Props) {
       ask="The sample and a grey card side by side, flat, in one even light, without shadow or gloss. It gives an estimate: a camera is no colorimeter."
       onClose={onClose}
     >
-      {(photoId, copy) => <Patching {...{ photoId, copy, onUse }} />}
+      {(photo) => <Patching {...{ ...photo, onUse }} />}
     </MarkDialog>
   )
 }
 
-type PatchingProps = { photoId: string; copy: OpenCopy; onUse: Props['onUse'] }
+type PatchingProps = MarkedPhoto & Pick<Props, 'onUse'>
 
-function Patching({ photoId, copy, onUse }: PatchingProps) {
+function Patching({ photoId, copy, frame, onUse }: PatchingProps) {
   const { width, height } = copy
   const [patches, setPatches] = useState<Patches>(() => firstPatches(width, height))
   const [picked, setPicked] = useState<Which>('grey')
   const [touched, setTouched] = useState<Which[]>([])
   const [finger, setFinger] = useState<Place | null>(null)
-  const [greyText, setGreyText] = useState(String(greyCardL))
+  const card = useGreyCard()
   const pixels = usePixels(copy)
-  const greyL = readTyped(greyText)
+  const greyL = readTyped(card.text)
   const read = useMemo(() => (pixels ? colourOf(pixels, patches, greyL) : null), [pixels, patches, greyL])
 
   function set(which: Which, square: Square) {
@@ -90,98 +92,101 @@ function Patching({ photoId, copy, onUse }: PatchingProps) {
   const open = (['grey', 'sample'] as const).filter((which) => !touched.includes(which))
   const lab = read && 'lab' in read ? read.lab : null
   return (
-    <div className="grid gap-5 lg:grid-cols-[minmax(0,1fr)_400px]">
-      <MarkPicture
-        copy={copy}
-        finger={finger}
-        at={finger ?? patches[picked]}
-        cursor="cursor-move"
-        loupeMark={<LoupeCross />}
-        onDown={onDown}
-        onDrag={(place) => {
-          setFinger(place)
-          set(picked, { ...patches[picked], ...place })
-        }}
-        onUp={() => setFinger(null)}
-      >
-        <PhotoSquares
-          src={copy.url}
-          alt="The photo with the patches on grey card and sample"
-          {...{ width, height }}
-          squares={(['grey', 'sample'] as const).map((which) => ({
-            name: names[which],
-            square: patches[which],
-            isPicked: picked === which,
-          }))}
-        />
-      </MarkPicture>
-      <div className="flex flex-col gap-4">
-        <div role="group" aria-label="Patches" className="grid grid-cols-2 gap-3">
-          {(['grey', 'sample'] as const).map((which) => (
-            <button
-              key={which}
-              type="button"
-              aria-pressed={picked === which}
-              onClick={() => setPicked(which)}
-              onFocus={() => setPicked(which)}
-              onKeyDown={onKey}
-              className={`min-h-16 rounded px-4 py-1 text-left ${picked === which ? 'border-[3px] border-ink bg-typed' : 'border-2 border-rule bg-paper'}`}
-            >
-              <b className="block text-18">{names[which]}</b>
-              <span className="text-17">
-                {patches[which].x} across, {patches[which].y} down, {patches[which].side} wide
-              </span>
-            </button>
-          ))}
-        </div>
-        <p className="text-17 text-soft">
-          Press the place on the photo and drag, or use the buttons; arrow keys move the patch, plus and minus
-          size it.
-        </p>
-        <MovePad name={names[picked]} onMove={move} />
-        <div className="grid grid-cols-2 gap-3">
-          <Nudge label="smaller" says={`${names[picked]} smaller`} onPress={() => resize(0.8)} />
-          <Nudge label="larger" says={`${names[picked]} larger`} onPress={() => resize(1.25)} />
-        </div>
-        <Field
-          label="L* of the grey card"
-          density="bench"
-          inputMode="decimal"
-          value={greyText}
-          onText={setGreyText}
-          hint="49.5 is a card that reflects 18 %. Its maker’s figure is better."
-        />
-        <div aria-live="polite" className="min-h-24">
-          {read === null ? <p>The photo is being read.</p> : null}
-          {read && 'refused' in read ? <p className="font-700 text-alarm">{read.refused}</p> : null}
-          {lab && read && 'reasons' in read ? (
-            <>
-              <p className="text-18">
-                {read.reasons.length > 0 ? 'Not sure. Better take it again.' : 'Estimate, L* a* b*'}
-              </p>
-              <p className="text-30 font-650">{shownLab(lab)}</p>
-              {read.reasons.map((reason) => (
-                <p key={reason} className="text-17">
-                  {reason}
-                </p>
-              ))}
-            </>
-          ) : null}
-        </div>
+    <MarkTable
+      {...frame}
+      picture={
+        <MarkPicture
+          copy={copy}
+          finger={finger}
+          at={finger ?? patches[picked]}
+          cursor="cursor-move"
+          loupeMark={<LoupeCross />}
+          onDown={onDown}
+          onDrag={(place) => {
+            setFinger(place)
+            set(picked, { ...patches[picked], ...place })
+          }}
+          onUp={() => setFinger(null)}
+        >
+          <PhotoSquares
+            src={copy.url}
+            alt="The photo with the patches on grey card and sample"
+            {...{ width, height }}
+            squares={(['grey', 'sample'] as const).map((which) => ({
+              name: names[which],
+              square: patches[which],
+              isPicked: picked === which,
+            }))}
+          />
+        </MarkPicture>
+      }
+      tools={
+        <>
+          <div role="group" aria-label="Patches" className="grid grid-cols-2 gap-3">
+            {(['grey', 'sample'] as const).map((which) => (
+              <button
+                key={which}
+                type="button"
+                aria-pressed={picked === which}
+                onClick={() => setPicked(which)}
+                onFocus={() => setPicked(which)}
+                onKeyDown={onKey}
+                className={`min-h-16 rounded px-4 py-1 text-left ${picked === which ? 'border-[3px] border-ink bg-typed' : 'border-2 border-rule bg-paper'}`}
+              >
+                <b className="block text-18">{names[which]}</b>
+                <span className="text-17">
+                  {patches[which].x} across, {patches[which].y} down, {patches[which].side} wide
+                </span>
+              </button>
+            ))}
+          </div>
+          <MovePad name={names[picked]} onMove={move} />
+          <div className="grid grid-cols-2 gap-3">
+            <Nudge label="smaller" says={`${names[picked]} smaller`} onPress={() => resize(0.8)} />
+            <Nudge label="larger" says={`${names[picked]} larger`} onPress={() => resize(1.25)} />
+          </div>
+          <Field
+            label="L* of the grey card"
+            density="bench"
+            inputMode="decimal"
+            value={card.text}
+            onText={card.type}
+            hint={card.origin}
+          />
+          <div aria-live="polite">
+            {read && 'reasons' in read
+              ? read.reasons.map((reason) => (
+                  <p key={reason} className="text-17">
+                    {reason}
+                  </p>
+                ))
+              : null}
+          </div>
+          <p className="text-17 text-soft">
+            Press the place on the photo and drag, or use the buttons; arrow keys move the patch, plus and
+            minus size it.
+          </p>
+        </>
+      }
+      told={
+        lab && read && 'reasons' in read ? (
+          <p>
+            <span className="block text-17">
+              {read.reasons.length > 0 ? 'Not sure. Better take it again.' : 'Estimate, L* a* b*'}
+            </span>
+            <b className="text-30 font-650 leading-none">{shownLab(lab)}</b>
+          </p>
+        ) : null
+      }
+      act={
         <Button
           density="bench"
           kind="primary"
-          className="mt-auto"
-          {...(open.length > 0
-            ? {
-                why: `Put the patch on the ${open.map((which) => names[which].toLowerCase()).join(', and one on the ')}.`,
-              }
-            : lab
-              ? {}
-              : { why: 'No colour can be told yet.' })}
+          {...whyOff(open, read)}
           onClick={() => {
             if (!pixels || !lab || greyL === null) return
             const { grey, sample } = patches
+            card.keep()
             onUse(lab, {
               ...{ photoId, width, height, greyL, grey, sample, readBy: 'device' },
               patches: { grey: patchOf(pixels, grey), sample: patchOf(pixels, sample) },
@@ -190,9 +195,20 @@ function Patching({ photoId, copy, onUse }: PatchingProps) {
         >
           Use this estimate
         </Button>
-      </div>
-    </div>
+      }
+    />
   )
+}
+
+type Read = ReturnType<typeof colourOf>
+
+function whyOff(open: Which[], read: Read | null): { why?: string } {
+  if (open.length > 0)
+    return {
+      why: `Put the patch on the ${open.map((which) => names[which].toLowerCase()).join(', and one on the ')}.`,
+    }
+  if (read === null) return { why: 'The photo is being read.' }
+  return 'refused' in read ? { why: read.refused } : {}
 }
 
 const shownLab = ({ L, a, b }: Lab) => [L, a, b].map((part) => part.toFixed(1)).join(' ')

@@ -8,8 +8,9 @@ import type { BenchJarPage } from '@/lib/bench/queries/jar'
 import { mostDropsOnPhoto, type PhotoDropsOfReading } from '@/lib/reading/schema/photo-drops'
 import { readTyped } from '@/lib/reading/schema/typed'
 import { diametersOnPhoto, lengthOf, shortestBarPx, type Stretch } from '@/lib/science/photo-drops'
-import { MarkDialog, type OpenCopy } from './mark-dialog'
+import { MarkDialog, type MarkedPhoto } from './mark-dialog'
 import { LoupeCross, MarkPicture, type Place } from './mark-picture'
+import { MarkTable } from './mark-table'
 import { MovePad, moveOfKey } from './nudge'
 import { PhotoDrops } from './photo-drops'
 
@@ -29,14 +30,14 @@ export default function DropsOnPhoto({ jar, onUse, onClose }: Props) {
       ask="A microscope photo that shows its scale bar. Measure every drop of a field, small ones too, else the mean is too large."
       onClose={onClose}
     >
-      {(photoId, copy) => <Measuring {...{ photoId, copy, onUse }} />}
+      {(photo) => <Measuring {...{ ...photo, onUse }} />}
     </MarkDialog>
   )
 }
 
-type MeasuringProps = { photoId: string; copy: OpenCopy; onUse: Props['onUse'] }
+type MeasuringProps = MarkedPhoto & Pick<Props, 'onUse'>
 
-function Measuring({ photoId, copy, onUse }: MeasuringProps) {
+function Measuring({ photoId, copy, frame, onUse }: MeasuringProps) {
   const { width, height } = copy
   const [bar, setBar] = useState<Stretch | null>(null)
   const [umText, setUmText] = useState('')
@@ -84,103 +85,107 @@ function Measuring({ photoId, copy, onUse }: MeasuringProps) {
   }
 
   return (
-    <div className="grid gap-5 lg:grid-cols-[minmax(0,1fr)_400px]">
-      <MarkPicture
-        copy={copy}
-        finger={finger}
-        at={finger ?? cross}
-        cursor="cursor-crosshair"
-        loupeMark={<LoupeCross />}
-        onDown={setFinger}
-        onDrag={setFinger}
-        onUp={() => {
-          if (finger) setPoint(finger)
-          setFinger(null)
-        }}
-      >
-        <PhotoDrops
-          src={copy.url}
-          alt="The photo with its scale bar and the drops that are measured"
-          {...{ width, height, bar, drops, pending }}
-          cross={finger ?? cross}
-        />
-      </MarkPicture>
-      <div className="flex min-w-0 flex-col gap-4">
-        <p role="status" className="text-22 font-650">
-          {nextStep(bar !== null && !isBarShort, isScaled, pending !== null, drops.length)}
-        </p>
-        {isBarShort ? (
-          <p className="font-700 text-alarm">
-            The scale bar is too short. Set its ends apart, or take a larger photo.
+    <MarkTable
+      {...frame}
+      picture={
+        <MarkPicture
+          copy={copy}
+          finger={finger}
+          at={finger ?? cross}
+          cursor="cursor-crosshair"
+          loupeMark={<LoupeCross />}
+          onDown={setFinger}
+          onDrag={setFinger}
+          onUp={() => {
+            if (finger) setPoint(finger)
+            setFinger(null)
+          }}
+        >
+          <PhotoDrops
+            src={copy.url}
+            alt="The photo with its scale bar and the drops that are measured"
+            {...{ width, height, bar, drops, pending }}
+            cross={finger ?? cross}
+          />
+        </MarkPicture>
+      }
+      tools={
+        <>
+          <p role="status" className="text-22 font-650">
+            {nextStep(bar !== null && !isBarShort, isScaled, pending !== null, drops.length)}
           </p>
-        ) : null}
-        <Field
-          label="Scale bar, micrometres"
-          density="bench"
-          inputMode="decimal"
-          value={umText}
-          onText={setUmText}
-        />
-        <div className="grid gap-3">
-          <button
-            type="button"
-            onKeyDown={onKey}
-            onClick={() => setPoint(cross)}
-            className="min-h-16 rounded border-2 border-rule bg-paper px-4 text-18 font-600 focus:border-[3px] focus:border-ink"
-          >
-            Set a point at the cross
-            <span className="sr-only">
-              , {Math.round(cross.x)} across, {Math.round(cross.y)} down
-            </span>
-          </button>
-          <MovePad name="Cross" onMove={move} />
-          <p className="text-17 text-soft">
-            Press and let go where the loupe shows the edge. By keys: arrows move the cross, Enter sets the
-            point, Backspace takes it back.
-          </p>
-        </div>
-        <Button density="bench" onClick={undo} {...(bar || pending ? {} : { why: 'Nothing is set yet.' })}>
-          Take the last one back
-        </Button>
-        <div aria-live="polite">
-          {means ? (
-            <p>
-              <b className="text-30 font-650">{means.d32.toFixed(2)}</b> micrometres D[3,2] of{' '}
-              {diameters.length} drops
-              <span className="block text-17 text-soft">
-                D[4,3] {means.d43.toFixed(2)}, span {means.span.toFixed(2)}
-              </span>
+          {isBarShort ? (
+            <p className="font-700 text-alarm">
+              The scale bar is too short. Set its ends apart, or take a larger photo.
             </p>
           ) : null}
-        </div>
-        <ol
-          aria-label="Diameters"
-          className="max-h-[260px] overflow-y-auto"
-          tabIndex={drops.length > 3 ? 0 : -1}
-        >
-          {drops.map((_, index) => (
-            <li key={index} className="flex min-h-16 items-center justify-between gap-3 border-b border-hair">
-              <span className="text-18">
-                {index + 1}.{' '}
-                {diameters[index] === undefined
-                  ? 'waits for the scale'
-                  : `${shownUm(diameters[index])} micrometres`}
+          <Field
+            label="Scale bar, micrometres"
+            density="bench"
+            inputMode="decimal"
+            value={umText}
+            onText={setUmText}
+          />
+          <div className="grid gap-3">
+            <button
+              type="button"
+              onKeyDown={onKey}
+              onClick={() => setPoint(cross)}
+              className="min-h-16 rounded border-2 border-rule bg-paper px-4 text-18 font-600 focus:border-[3px] focus:border-ink"
+            >
+              Set a point at the cross
+              <span className="sr-only">
+                , {Math.round(cross.x)} across, {Math.round(cross.y)} down
               </span>
-              <button
-                type="button"
-                aria-label={`Delete drop ${index + 1}`}
-                onClick={() => setDrops((all) => all.filter((__, other) => other !== index))}
-                className="min-h-16 px-3 text-17 underline underline-offset-4"
+            </button>
+            <MovePad name="Cross" onMove={move} />
+            <p className="text-17 text-soft">
+              Press and let go where the loupe shows the edge. By keys: arrows move the cross, Enter sets the
+              point, Backspace takes it back.
+            </p>
+          </div>
+          <Button density="bench" onClick={undo} {...(bar || pending ? {} : { why: 'Nothing is set yet.' })}>
+            Take the last one back
+          </Button>
+          <ol aria-label="Diameters">
+            {drops.map((_, index) => (
+              <li
+                key={index}
+                className="flex min-h-16 items-center justify-between gap-3 border-b border-hair"
               >
-                Delete
-              </button>
-            </li>
-          ))}
-        </ol>
+                <span className="text-18">
+                  {index + 1}.{' '}
+                  {diameters[index] === undefined
+                    ? 'waits for the scale'
+                    : `${shownUm(diameters[index])} micrometres`}
+                </span>
+                <button
+                  type="button"
+                  aria-label={`Delete drop ${index + 1}`}
+                  onClick={() => setDrops((all) => all.filter((__, other) => other !== index))}
+                  className="min-h-16 px-3 text-17 underline underline-offset-4"
+                >
+                  Delete
+                </button>
+              </li>
+            ))}
+          </ol>
+        </>
+      }
+      told={
+        means ? (
+          <p>
+            <span className="block text-17">
+              D[3,2] of {diameters.length} drops, D[4,3] {means.d43.toFixed(2)}, span {means.span.toFixed(2)}
+            </span>
+            <b className="text-30 font-650 leading-none">{means.d32.toFixed(2)}</b> micrometres
+          </p>
+        ) : null
+      }
+      act={
         <Button
           density="bench"
           kind="primary"
-          className="mt-auto"
           {...(!isScaled
             ? { why: 'Set the scale bar and its length first.' }
             : drops.length === 0
@@ -193,8 +198,8 @@ function Measuring({ photoId, copy, onUse }: MeasuringProps) {
         >
           Use these {drops.length === 1 ? 'drop' : 'drops'}
         </Button>
-      </div>
-    </div>
+      }
+    />
   )
 }
 

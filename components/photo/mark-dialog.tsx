@@ -1,23 +1,26 @@
 'use client'
 
-import { lazy, Suspense, useRef, useState, type ReactNode } from 'react'
+import { Suspense, useRef, useState, type ReactNode } from 'react'
 import { PhotosOnTheirWay } from '@/components/device/photos-on-their-way'
 import { Busy } from '@/components/ui/busy'
 import { Button } from '@/components/ui/button'
+import { ComingDialog } from '@/components/ui/coming'
 import { Dialog } from '@/components/ui/dialog'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 import { newId } from '@/lib/db/id'
 import { photoKeys } from '@/lib/photo/keys'
 import type { PhotoShows } from '@/lib/photo/schema'
 import { dayText } from '@/lib/report/rules'
+import { Camera } from './later'
 import type { MeasuringCopy } from './measuring-copy'
 import { useJarPhotos } from './use-jar-photos'
 import { useCopy } from './use-measuring'
 
-const Camera = lazy(() => import('./camera'))
-
 export type OpenCopy = MeasuringCopy & { url: string }
 type InHand = { id: string; file: Blob | null }
+/** Of the dialog that it all happens in. */
+type Frame = { title: string; onClose: () => void }
+export type MarkedPhoto = { photoId: string; copy: OpenCopy; frame: Frame }
 type Props = {
   jar: BenchJarPage
   shows: PhotoShows
@@ -25,43 +28,58 @@ type Props = {
   /** What the photo must hold, before one is chosen. */
   ask: string
   onClose: () => void
-  children: (photoId: string, copy: OpenCopy) => ReactNode
+  /** The `MarkTable` of the chosen photo. */
+  children: (photo: MarkedPhoto) => ReactNode
 }
 
 /** A photo of this jar in this pull, taken or chosen, and then marked. */
 export function MarkDialog({ jar, shows, title, ask, onClose, children }: Props) {
   const [inHand, setInHand] = useState<InHand | null>(null)
+  const frame = { title: `${title}: ${jar.name}`, onClose }
+  if (inHand)
+    return (
+      <Opened photo={inHand} frame={frame} onAnother={() => setInHand(null)}>
+        {(copy) => children({ photoId: inHand.id, copy, frame })}
+      </Opened>
+    )
   return (
-    <Dialog isOpen onClose={onClose} title={`${title}: ${jar.name}`} density="bench" width={1120}>
-      {inHand ? (
-        <Opened photo={inHand} onAnother={() => setInHand(null)}>
-          {(copy) => children(inHand.id, copy)}
-        </Opened>
-      ) : (
-        <Choice jar={jar} shows={shows} ask={ask} onChoose={setInHand} />
-      )}
+    <Dialog isOpen {...frame} density="bench" width={1120}>
+      <Choice jar={jar} shows={shows} ask={ask} onChoose={setInHand} />
     </Dialog>
   )
 }
 
-type OpenedProps = { photo: InHand; onAnother: () => void; children: (copy: OpenCopy) => ReactNode }
+type OpenedProps = {
+  photo: InHand
+  frame: Frame
+  onAnother: () => void
+  children: (copy: OpenCopy) => ReactNode
+}
 
-function Opened({ photo, onAnother, children }: OpenedProps) {
+function Opened({ photo, frame, onAnother, children }: OpenedProps) {
   const { copy, isUnreadable } = useCopy(photo)
   if (copy) return children(copy)
   if (!isUnreadable)
     return (
-      <p role="status" className="flex items-center gap-3">
-        <Busy /> The photo is being opened.
-      </p>
+      <Dialog isOpen {...frame} density="bench">
+        <p role="status" className="flex items-center gap-3">
+          <Busy /> The photo is being opened.
+        </p>
+      </Dialog>
     )
   return (
-    <>
+    <Dialog
+      isOpen
+      {...frame}
+      density="bench"
+      acts={
+        <Button density="bench" onClick={onAnother}>
+          Another photo
+        </Button>
+      }
+    >
       <p role="alert">This photo cannot be opened here. Take it again, or choose another.</p>
-      <Button density="bench" onClick={onAnother}>
-        Another photo
-      </Button>
-    </>
+    </Dialog>
   )
 }
 
@@ -130,7 +148,16 @@ function Choice({ jar, shows, ask, onChoose }: ChoiceProps) {
           </li>
         ))}
       </ul>
-      <Suspense fallback={null}>
+      <Suspense
+        fallback={
+          <ComingDialog
+            what="The camera"
+            title="Take a photo"
+            density="bench"
+            onClose={() => setCamera(false)}
+          />
+        }
+      >
         {isCamera ? (
           <Camera
             ghost={null}

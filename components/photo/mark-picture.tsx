@@ -25,7 +25,7 @@ export const loupePx = 140
 /** CSS pixels for one pixel of the copy. */
 const zoom = 2.5
 
-/** A photo that is marked by hand, with a loupe on the place in question. */
+/** A photo that is marked by hand, with a loupe on the place in question; as large as its container lets it be. */
 export function MarkPicture({ copy, children, at, finger, loupeMark, cursor, onDown, onDrag, onUp }: Props) {
   const box = useRef<HTMLDivElement>(null)
 
@@ -42,9 +42,9 @@ export function MarkPicture({ copy, children, at, finger, loupeMark, cursor, onD
   return (
     <div
       ref={box}
-      className={`relative mx-auto touch-none overflow-hidden border-2 border-ink ${cursor}`}
+      className={`relative touch-none overflow-hidden outline outline-2 outline-ink ${cursor}`}
       style={{
-        width: `min(100%, ${(62 * copy.width) / copy.height}dvh)`,
+        width: `calc(min(100cqw, 100cqh * ${copy.width} / ${copy.height}) - 4px)`,
         aspectRatio: `${copy.width} / ${copy.height}`,
       }}
       onPointerDown={(event) => {
@@ -58,10 +58,11 @@ export function MarkPicture({ copy, children, at, finger, loupeMark, cursor, onD
       {children}
       <div
         aria-hidden
-        className={`pointer-events-none absolute overflow-hidden rounded-full border-[3px] border-[#0E1D17] bg-[#0E1D17] ${isRight ? 'right-2' : 'left-2'} ${isLow ? 'bottom-2' : 'top-2'}`}
+        className={`pointer-events-none absolute overflow-hidden rounded-full border-[3px] border-[#0E1D17] bg-[#0E1D17] [@container(max-height:330px)]:scale-[.68] [@container(max-height:200px)]:scale-50 ${isRight ? 'right-2' : 'left-2'} ${isLow ? 'bottom-2' : 'top-2'}`}
         style={{
           width: loupePx,
           height: loupePx,
+          transformOrigin: `${isRight ? 'right' : 'left'} ${isLow ? 'bottom' : 'top'}`,
           backgroundImage: `url(${copy.url})`,
           backgroundRepeat: 'no-repeat',
           backgroundSize: `${copy.width * zoom}px ${copy.height * zoom}px`,

@@ -10,6 +10,7 @@ import type { PhotoLinesOfReading } from '@/lib/reading/schema/photo-lines'
 import { separationOfLines, type PhotoLines } from '@/lib/science/photo-lines'
 import { DragPicture } from './drag-picture'
 import { firstLines, lineNames, lineOrder, moved, type Line } from './lines'
+import { MarkTable } from './mark-table'
 import { Nudge } from './nudge'
 import { SureWords } from './sure-words'
 import { useMeasuring, type PhotoToMeasure } from './use-measuring'
@@ -71,15 +72,19 @@ export default function Measure({ jar, photo, onUse, onClose }: Props) {
   }
 
   return (
-    <Dialog isOpen onClose={onClose} title={`Measure on the photo: ${jar.name}`} density="bench" width={1120}>
-      <div className="grid gap-5 md:grid-cols-[minmax(0,1fr)_340px] lg:grid-cols-[minmax(0,1fr)_400px]">
+    <MarkTable
+      title={`Measure on the photo: ${jar.name}`}
+      onClose={onClose}
+      picture={
         <DragPicture
           {...{ copy, lines, axisX, tiltDegrees, picked }}
           alt={`Jar ${jar.code} with the lines that are being set`}
           onPick={setPicked}
           onMove={move}
         />
-        <div className="flex flex-col gap-4">
+      }
+      tools={
+        <>
           <SureWords proposing={proposing} isMoved={byHand !== null} isSent={photo.isSent} />
           <div role="group" aria-label="Lines" className="grid gap-3">
             {lineOrder.map((line) => (
@@ -109,40 +114,42 @@ export default function Measure({ jar, photo, onUse, onClose }: Props) {
             <Nudge label="down 1" says={`${lineNames[picked]} down one pixel`} onPress={() => nudge(1)} />
             <Nudge label="down 10" says={`${lineNames[picked]} down ten pixels`} onPress={() => nudge(10)} />
           </div>
-          <div className="flex items-end gap-5" aria-live="polite">
-            <JarGlyph height={96} state="drawn" topPercent={topPercent} bottomPercent={bottomPercent} />
-            <p>
-              <span className="block text-18">Separation</span>
-              <b className="text-50 leading-none">{percent.toFixed(1)}</b> <span className="text-30">%</span>
-            </p>
-          </div>
-          <div className="mt-auto flex flex-wrap gap-3">
-            {byHand && proposal?.lines ? (
-              <Button density="bench" onClick={() => setByHand(null)}>
-                Back to the proposal
-              </Button>
-            ) : null}
-            <Button
-              density="bench"
-              kind="primary"
-              {...(byHand || proposal?.lines ? {} : { why: 'Set at least one line first.' })}
-              onClick={() =>
-                onUse({
-                  ...{ photoId: photo.id, width: copy.width, height: copy.height },
-                  ...{ lines, axisX, tiltDegrees },
-                  proposal: proposal && {
-                    sureness: proposal.sureness,
-                    reasons: proposal.reasons,
-                    lines: proposal.lines,
-                  },
-                })
-              }
-            >
-              Use these lines
+          {byHand && proposal?.lines ? (
+            <Button density="bench" onClick={() => setByHand(null)}>
+              Back to the proposal
             </Button>
-          </div>
+          ) : null}
+        </>
+      }
+      told={
+        <div className="flex items-center gap-4">
+          <JarGlyph height={64} state="drawn" topPercent={topPercent} bottomPercent={bottomPercent} />
+          <p>
+            <span className="block text-17">Separation</span>
+            <b className="text-36 leading-none">{percent.toFixed(1)}</b> <span className="text-24">%</span>
+          </p>
         </div>
-      </div>
-    </Dialog>
+      }
+      act={
+        <Button
+          density="bench"
+          kind="primary"
+          {...(byHand || proposal?.lines ? {} : { why: 'Set at least one line first.' })}
+          onClick={() =>
+            onUse({
+              ...{ photoId: photo.id, width: copy.width, height: copy.height },
+              ...{ lines, axisX, tiltDegrees },
+              proposal: proposal && {
+                sureness: proposal.sureness,
+                reasons: proposal.reasons,
+                lines: proposal.lines,
+              },
+            })
+          }
+        >
+          Use these lines
+        </Button>
+      }
+    />
   )
 }

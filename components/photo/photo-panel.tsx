@@ -1,18 +1,16 @@
 'use client'
 
-import { lazy, Suspense, useRef, useState } from 'react'
+import { Suspense, useRef, useState } from 'react'
 import { PhotosOnTheirWay } from '@/components/device/photos-on-their-way'
 import { Button } from '@/components/ui/button'
+import { ComingDialog } from '@/components/ui/coming'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 import { photoKeys } from '@/lib/photo/keys'
 import type { PhotoLinesOfReading } from '@/lib/reading/schema/photo-lines'
 import { dayText } from '@/lib/report/rules'
+import { Camera, Measure } from './later'
 import { useJarPhotos } from './use-jar-photos'
 import type { PhotoToMeasure } from './use-measuring'
-
-// Loaded when somebody measures or opens the camera.
-const Measure = lazy(() => import('./measure'))
-const Camera = lazy(() => import('./camera'))
 
 type Props = {
   jar: BenchJarPage
@@ -98,7 +96,19 @@ export function PhotoPanel({ jar, onMeasured }: Props) {
           </li>
         ))}
       </ul>
-      <Suspense fallback={null}>
+      <Suspense
+        fallback={
+          <ComingDialog
+            what={isCamera ? 'The camera' : 'What measures a photo'}
+            title={isCamera ? 'Take a photo' : 'Measure on the photo'}
+            density="bench"
+            onClose={() => {
+              setCamera(false)
+              setMeasuring(null)
+            }}
+          />
+        }
+      >
         {isCamera ? (
           <Camera
             ghost={before ? photoKeys.preview(before.id) : null}

@@ -15,6 +15,8 @@ export type DialogProps = {
   /** The acts at the right of the last line: leave first, do last. */
   acts?: ReactNode
   width?: number
+  /** It takes the screen's height, and its children share what title and acts leave of it. */
+  fills?: boolean
 }
 
 export const loadDialog = () => import('./dialog-frame')

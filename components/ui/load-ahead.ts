@@ -11,12 +11,17 @@ export function useLoadAhead(load: () => Promise<unknown>): void {
   }, [load])
 }
 
-/** Where the network is away just then, what is asked for comes once it is back, and the page stays as it is. */
+/**
+ * Where the network is away just then, what is asked for comes once it is back, and the page stays as it is. Only what
+ * fails while the device says that it has a network is given up after a while.
+ */
 export async function whenReached<T>(load: () => Promise<T>): Promise<T> {
-  for (let left = tries; left > 0; left -= 1) {
+  let left = tries
+  while (left > 0) {
     try {
       return await load()
     } catch {
+      if (navigator.onLine) left -= 1
       await new Promise((resolve) => setTimeout(resolve, betweenMs))
     }
   }

@@ -1,4 +1,4 @@
-import { access, mkdir, open, readFile, rename, rm } from 'node:fs/promises'
+import { access, mkdir, open, readdir, readFile, rename, rm, stat } from 'node:fs/promises'
 import path from 'node:path'
 import { newId } from '@/lib/db/id'
 import { incomingIn } from './incoming'
@@ -30,6 +30,18 @@ export function folderStorage(folder: string): Storage {
         () => false,
       )
     },
+    async *list(folder) {
+      const all = await readdir(path.join(root, folder), { recursive: true, withFileTypes: true }).catch(none)
+      for (const one of all) {
+        if (!one.isFile()) continue
+        const file = path.join(one.parentPath, one.name)
+        const found = await stat(file).catch(absent)
+        if (found) yield { key: path.relative(root, file).split(path.sep).join('/'), storedAt: found.mtimeMs }
+      }
+    },
+    async remove(key) {
+      await rm(placeOf(root, key), { force: true })
+    },
   }
 }
 
@@ -47,6 +59,11 @@ async function write(file: string, bytes: Uint8Array): Promise<void> {
   } finally {
     await handle.close()
   }
+}
+
+function none(error: NodeJS.ErrnoException): [] {
+  absent(error)
+  return []
 }
 
 function absent(error: NodeJS.ErrnoException): null {

@@ -1,6 +1,8 @@
 import {
+  DeleteObjectCommand,
   GetObjectCommand,
   HeadObjectCommand,
+  ListObjectsV2Command,
   NoSuchKey,
   NotFound,
   PutObjectCommand,
@@ -43,6 +45,25 @@ export function s3Storage(settings: S3Settings): Storage {
         if (error instanceof NotFound) return false
         throw error
       }
+    },
+    async *list(folder) {
+      let from: string | undefined
+      do {
+        const page = await client.send(
+          new ListObjectsV2Command({
+            Bucket: settings.bucket,
+            Prefix: `${folder}/`,
+            ...(from ? { ContinuationToken: from } : {}),
+          }),
+        )
+        for (const { Key, LastModified } of page.Contents ?? [])
+          // Without a time nobody knows its age: it is as if it came just now.
+          if (Key) yield { key: Key, storedAt: LastModified?.getTime() ?? Date.now() }
+        from = page.NextContinuationToken
+      } while (from)
+    },
+    async remove(key) {
+      await client.send(new DeleteObjectCommand(at(key)))
     },
   }
 }

@@ -1,8 +1,8 @@
 import type { Actor } from '@/lib/auth/actor'
 import type { Trx } from '@/lib/db/client'
-import { storage } from '@/lib/files/storage'
 import { refuse } from '@/lib/http/errors'
 import type { Received } from '@/lib/http/upload'
+import { keepWhole } from '@/lib/photo/commands/keep-whole'
 import { originalKey } from '@/lib/photo/rules/keys'
 import { getStudyHead, listStudyBatches } from '@/lib/study/queries/head'
 import type { OutsideFields } from './schema'
@@ -38,9 +38,7 @@ export async function addOutsideResult(
     })
   }
   if (fields.supersedesId) await refuseWrongOld(trx, study.id, fields.supersedesId)
-  const files = storage()
-  const key = originalKey(file.sha256)
-  if (!(await files.has(key))) await files.put(key, file.path, file.type)
+  await keepWhole(trx, originalKey(file.sha256), file.path, file.type)
   await trx
     .insertInto('outsideResult')
     .values({

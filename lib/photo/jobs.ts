@@ -1,5 +1,7 @@
 import { env } from '@/lib/env'
 import { sweepIncoming } from '@/lib/files/incoming'
+import type { JobContext } from '@/lib/jobs/job'
+import { sweepUnnamed } from './commands/sweep-unnamed'
 import { keptPreview } from './queries/file'
 
 export const previewQueue = 'photo.preview'
@@ -12,7 +14,11 @@ export async function makePhotoPreview(data: { sha256: string; type: string }): 
 export const sweepQueue = 'photo.sweep'
 const oneDayMs = 24 * 3_600_000
 
-/** A server that died while a file arrived leaves a part of it behind, which nobody would ever read. */
-export async function sweepUploads(): Promise<void> {
+/**
+ * A server that died while a file arrived leaves a part of it behind, which nobody would ever read; one that died between
+ * file and row, a whole file that nothing names.
+ */
+export async function sweepFiles({ db }: JobContext): Promise<void> {
   await sweepIncoming(env().filesFolder, oneDayMs)
+  await sweepUnnamed(db, oneDayMs)
 }

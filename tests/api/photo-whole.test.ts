@@ -2,8 +2,6 @@ import { spawn } from 'node:child_process'
 import { createHash } from 'node:crypto'
 import { once } from 'node:events'
 import { mkdtemp, readdir, rm, utimes, writeFile } from 'node:fs/promises'
-import { createServer, type Server } from 'node:http'
-import type { AddressInfo } from 'node:net'
 import { tmpdir } from 'node:os'
 import path from 'node:path'
 import { Jimp } from 'jimp'
@@ -18,6 +16,7 @@ import { originalKey } from '@/lib/photo/rules/keys'
 import { askedJars, benchStudy, jarAt } from '../support/bench-study'
 import { call } from '../support/call'
 import { testDatabase, type Signed, type TestDatabase } from '../support/database'
+import { s3Bucket } from '../support/s3'
 
 // D04: a photo is whole or absent. Whatever happens while it arrives, a row is there only where its bytes are, under its
 // hash, and what is left of the others is swept.
@@ -151,39 +150,15 @@ it('D04: where the folder takes no more there is no row; once it does, the same 
 })
 
 it('D04: with files in S3 that fails, breaks off or is slow, a row is there only where the whole object is', async () => {
-  let mood: 'well' | 'fails' | 'breaks off' | 'slow' = 'well'
-  const kept = new Map<string, Buffer>()
-  const server: Server = createServer(async (request, response) => {
-    const name = new URL(request.url!, 'http://s3').pathname
-    if (request.method !== 'PUT') {
-      const body = kept.get(name)
-      response.writeHead(body ? 200 : 404).end(request.method === 'GET' ? body : undefined)
-      return
-    }
-    if (mood === 'breaks off') return void request.once('data', () => request.socket.destroy())
-    const parts: Buffer[] = []
-    for await (const part of request) parts.push(part as Buffer)
-    if (mood === 'fails') return void response.writeHead(500).end()
-    if (mood === 'slow') await pause(1_000)
-    kept.set(name, Buffer.concat(parts))
-    response.writeHead(200).end()
-  })
-  await once(server.listen(0, '127.0.0.1'), 'listening')
-  const { port } = server.address() as AddressInfo
-  const settings = {
-    S3_ENDPOINT: `http://127.0.0.1:${port}`,
-    S3_BUCKET: 'photos',
-    S3_ACCESS_KEY_ID: 'test',
-    S3_SECRET_ACCESS_KEY: 'test',
-  }
-  Object.assign(process.env, settings)
+  const bucket = await s3Bucket()
   try {
     const [bytes, id] = [await picture(0x669933ff), newId()]
-    for (mood of ['fails', 'breaks off'] as const) {
+    for (const mood of ['fails', 'breaks off'] as const) {
+      bucket.mood = mood
       expect((await send(bytes, id)).status, mood).toBeGreaterThanOrEqual(500)
       await expectAbsent(id, bytes)
     }
-    mood = 'slow'
+    bucket.mood = 'slow'
     const key = newId()
     const sending = [send(bytes, id, key), send(bytes, id, key)]
     await pause(300)
@@ -192,7 +167,6 @@ it('D04: with files in S3 that fails, breaks off or is slow, a row is there only
     expect(statuses).toContain(200)
     await expectWhole(id, bytes)
   } finally {
-    for (const name of Object.keys(settings)) delete process.env[name]
-    server.close()
+    bucket.close()
   }
 })

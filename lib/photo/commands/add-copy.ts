@@ -1,7 +1,6 @@
 import { readFile } from 'node:fs/promises'
 import type { Actor } from '@/lib/auth/actor'
 import type { Trx } from '@/lib/db/client'
-import { storage } from '@/lib/files/storage'
 import { refuse } from '@/lib/http/errors'
 import type { Received } from '@/lib/http/upload'
 import { findFile } from '../queries/file'
@@ -11,6 +10,7 @@ import { imageSize } from '../rules/size'
 import { wrongWith } from '../rules/whole'
 import { withoutPlace } from '../rules/without-place'
 import { copyPixels } from '../schema'
+import { keepWhole } from './keep-whole'
 
 /** The measuring copy that the browser made of a photo. The first one stays: lines on record are drawn on it. */
 export async function addCopy(trx: Trx, actor: Actor, id: string, file: Received) {
@@ -36,7 +36,7 @@ export async function keepCopy(trx: Trx, actor: Actor, photo: Size & { id: strin
     throw refuse.invalid(
       'The measuring copy has another shape than its photo. Open the photo and measure anew.',
     )
-  await storage().put(copyKey(file.sha256), bytes, 'image/jpeg')
+  await keepWhole(trx, copyKey(file.sha256), bytes, 'image/jpeg')
   await trx
     .insertInto('photoCopy')
     .values({ photoId: photo.id, sha256: file.sha256, bytes: file.bytes, ...size, madeBy: actor.personId })

@@ -1,7 +1,6 @@
 import { readFile } from 'node:fs/promises'
 import type { Actor } from '@/lib/auth/actor'
 import type { Trx } from '@/lib/db/client'
-import { storage } from '@/lib/files/storage'
 import { AppError, refuse } from '@/lib/http/errors'
 import type { Received } from '@/lib/http/upload'
 import { enqueue } from '@/lib/jobs/enqueue'
@@ -12,6 +11,7 @@ import { imageSize } from '../rules/size'
 import { wrongWith } from '../rules/whole'
 import { maxPhotoPixels, type PhotoFields } from '../schema'
 import { keepCopy } from './add-copy'
+import { keepWhole } from './keep-whole'
 
 const heic = ['image/heic', 'image/heif', 'image/heic-sequence', 'image/heif-sequence']
 /** What the upload lets through to here, the last of them only to be refused with a way out. */
@@ -75,9 +75,7 @@ async function keepCopyIfSound(
 /** A picture checked and stored whole, and what of it a row keeps. Its small picture is made ahead by a job. */
 export async function keepPicture(trx: Trx, { sha256, bytes, type, originalName, path }: Received) {
   const size = await checkPicture({ path, type })
-  const files = storage()
-  const key = originalKey(sha256)
-  if (!(await files.has(key))) await files.put(key, path, type)
+  await keepWhole(trx, originalKey(sha256), path, type)
   await enqueue(trx, previewQueue, { sha256, type })
   return { sha256, bytes, type, ...size, originalName }
 }

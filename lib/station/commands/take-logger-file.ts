@@ -4,9 +4,10 @@ import Papa from 'papaparse'
 import type { Actor } from '@/lib/auth/actor'
 import type { Trx } from '@/lib/db/client'
 import { newId } from '@/lib/db/id'
-import { storage } from '@/lib/files/storage'
 import { refuse } from '@/lib/http/errors'
 import type { Received } from '@/lib/http/upload'
+import { keepWhole } from '@/lib/photo/commands/keep-whole'
+import { loggerKey } from '@/lib/photo/rules/keys'
 import { readLog, type CsvRow, type LoggerRow, type ReadLog } from '../rules/logger-file'
 import { maxLoggerRows, type LoggerFields, type LoggerPreview } from '../schema'
 
@@ -55,7 +56,7 @@ export async function takeLoggerFile(
   const [first, last] = [log.rows.at(0), log.rows.at(-1)]
   if (!first || !last)
     throw refuse.invalid('No row of this file can be taken.', { file: 'Every row is bad.' })
-  await keepFile(file)
+  await keepWhole(trx, loggerKey(file.sha256), file.path, 'text/csv')
   const times = log.rows.map((row) => row.at)
   await trx
     .insertInto('loggerFile')
@@ -181,12 +182,6 @@ function previewOf(
     sample: fresh.slice(0, 5).map((row) => ({ ...row, at: new Date(row.at).toISOString() })),
     before: before ?? null,
   }
-}
-
-async function keepFile({ sha256, path }: Received): Promise<void> {
-  const files = storage()
-  const key = `logger/${sha256}`
-  if (!(await files.has(key))) await files.put(key, path, 'text/csv')
 }
 
 async function insertRows(
