@@ -10,6 +10,7 @@ import { useRememberPerson, type BenchPerson } from '@/components/device/last-pe
 import { useOutbox } from '@/components/device/use-outbox'
 import { useReady } from '@/components/device/use-ready'
 import { useLoadAhead } from '@/components/ui/load-ahead'
+import { readSegment } from '@/lib/address/rules'
 
 /**
  * The walk and the jars are one page: going from jar to jar needs no network, because the day's jars were
@@ -17,7 +18,7 @@ import { useLoadAhead } from '@/components/ui/load-ahead'
  */
 export function BenchApp({ person }: { person: BenchPerson }) {
   const path = usePathname()
-  const code = path.startsWith('/bench/') ? decodeURIComponent(path.slice('/bench/'.length)) : null
+  const code = path.startsWith('/bench/') ? readSegment(path.slice('/bench/'.length)) : null
   const { bench, areDaysKept, refresh } = useBenchData(code)
   const isReady = useReady(areDaysKept)
   const outbox = useOutbox(refresh)

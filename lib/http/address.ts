@@ -1,12 +1,13 @@
 import { Server, type IncomingMessage } from 'node:http'
 import { env } from '@/lib/env'
+import { readablePath } from '@/lib/address/rules'
 
 const header = 'x-stillstand-address'
 const state = globalThis as typeof globalThis & { stillstandAddress?: true }
 
 /**
- * Writes the socket's address into a header of our own before anything reads the request. Next passes on
- * whatever X-Forwarded-For the caller made up, so that one cannot slow down a guesser.
+ * Before anything reads a request: the address it asks for is made readable, and the socket's is written into a header of
+ * our own. Next passes on whatever X-Forwarded-For the caller made up, so that one cannot slow down a guesser.
  */
 export function installAddress(): void {
   if (state.stillstandAddress) return
@@ -16,6 +17,7 @@ export function installAddress(): void {
   prototype.emit = function (this: Server, event: string, ...rest: unknown[]): boolean {
     if (event === 'request' || event === 'upgrade') {
       const request = rest[0] as IncomingMessage
+      if (request.url) request.url = readablePath(request.url)
       request.headers[header] = request.socket.remoteAddress ?? 'unknown'
     }
     return Reflect.apply(emit, this, [event, ...rest])

@@ -120,6 +120,40 @@ describe('a save that is undone', () => {
     expect(await stateOf(jar)).toMatchObject({ state: 'resting', jarState: 'resting' })
   })
 
+  it('a part that is undone takes its own note along: the note that stood before stands again, one noted since stays', async () => {
+    const jar = await jarNow(45, 2, 'measuring')
+    const [ph, viscosity] = measured(study, jar).readings
+    const note = async () =>
+      (
+        await t.db
+          .selectFrom('pullJar')
+          .select(['note', 'state'])
+          .where('id', '=', jar.pullJarId)
+          .executeTakeFirstOrThrow()
+      ).note
+    const part = (readings: unknown[], said: string) => ({
+      ...measured(study, jar),
+      ...{ readings: readings as Body['readings'], isPartial: true, note: said },
+    })
+    const first = part([ph], 'lid was loose')
+    expect((await keep(jar, first)).body).toMatchObject({ state: 'due' })
+    const second = part([viscosity], 'beads at the rim')
+    expect((await keep(jar, second)).body).toMatchObject({ state: 'done' })
+    expect(await note()).toBe('lid was loose\nbeads at the rim')
+
+    expect((await takeBack(jar, second)).body).toMatchObject({ state: 'due' })
+    expect(await note()).toBe('lid was loose')
+    const again = part([{ ...viscosity, id: newId() }], 'beads at the rim')
+    expect((await keep(jar, again)).body).toMatchObject({ state: 'done' })
+    // The earlier part, after a later one was noted.
+    expect((await takeBack(jar, first)).body).toMatchObject({ state: 'due' })
+    expect(await note()).toBe('beads at the rim')
+    // Its jar is still open, and what is left of the note goes with the last part.
+    expect((await takeBack(jar, again)).body).toMatchObject({ state: 'due' })
+    expect(await note()).toBe('')
+    expect(await voidsOf(jar)).toHaveLength(3)
+  })
+
   it('a spare of which something was read stays called for', async () => {
     const jar = await jarNow(5, 6, 'watch')
     const body = layered(study, jar, 3, 5)

@@ -103,6 +103,22 @@ for (const visit of visits) {
   })
 }
 
+test('A malformed address is not found, and says so as everything else that is not there', async ({
+  page,
+}) => {
+  await openAs(page, 'liv', '/profile')
+  for (const address of ['/studies/%ff', '/bench/%E0%A4%A', '/batches/%zz', '/protocols/%00']) {
+    const answer = await page.request.get(address)
+    expect([address, answer.status()]).toEqual([address, 404])
+    expect(await answer.text()).toContain('Nothing here')
+  }
+  const asked = await page.request.get('/api/bench/%ff')
+  expect([asked.status(), await asked.json()]).toMatchObject([
+    404,
+    { error: { sentence: 'No jar has the code %FF. Read the label again.' } },
+  ])
+})
+
 test('A07: every page of app is among those that are looked at', async () => {
   const pages = (await filesNamed('page.tsx')).map((file) =>
     file

@@ -5,7 +5,7 @@ import { newId } from '@/lib/db/id'
 import { refuse } from '@/lib/http/errors'
 import { lockStudyOfPullJar, recomputeSeries } from '@/lib/series/commands'
 import { findPullJar, type PullJar } from '../queries/pull-jar'
-import { isUndone, refuseUndo, undoneReason, type SavedReading } from '../rules/undo'
+import { isUndone, noteWithout, refuseUndo, undoneReason, type SavedReading } from '../rules/undo'
 import type { UndoneSave } from '../schema'
 
 /**
@@ -37,7 +37,7 @@ export async function undoSave(trx: Trx, actor: Actor, pullJarId: string, input:
     .execute()
   const touched = [...new Set(saved.map((reading) => reading.attribute))]
   const takenBack = await takeRepeatsBack(trx, jar, touched)
-  const reopened = await reopenJar(trx, jar)
+  const reopened = await reopenJar(trx, jar, await noteBefore(trx, jar, saved))
   const recomputed = await recomputeSeries(trx, actor, jar.studyId, { only: touched })
   return { ...reopened, takenBack, ...recomputed }
 }
@@ -76,18 +76,33 @@ async function takeRepeatsBack(trx: Trx, jar: PullJar, attributes: readonly stri
   return rows.map((row) => row.code)
 }
 
-/** As it was before the save: resting where it had been taken out, else due; nothing is spent. */
-async function reopenJar(trx: Trx, jar: PullJar): Promise<{ version: number; state: string }> {
-  if (jar.state !== 'done') return { version: jar.version, state: jar.state }
+/** The trail knows what the jar's note was before this save and what it made of it. */
+async function noteBefore(trx: Trx, jar: PullJar, [first]: readonly SavedReading[]): Promise<string> {
+  const { rows } = await sql<{ before: string; after: string }>`
+    select jar.before ->> 'note' as before, jar.after ->> 'note' as after
+      from trail saved join trail jar on jar.request_id = saved.request_id
+      where saved.table_name = 'reading' and saved.row_id = ${first!.id} and saved.operation = 'insert'
+        and jar.table_name = 'pull_jar' and jar.row_id = ${jar.id} and jar.operation = 'update'
+  `.execute(trx)
+  return rows[0] ? noteWithout(jar.note, rows[0]) : jar.note
+}
+
+/** As it was before the save: resting where it had been taken out, else due; nothing is spent; one still open stays so. */
+async function reopenJar(trx: Trx, jar: PullJar, note: string): Promise<{ version: number; state: string }> {
+  const wasDone = jar.state === 'done'
+  if (!wasDone && note === jar.note) return { version: jar.version, state: jar.state }
   const [state, jarState] = jar.takenAt ? ['resting', 'resting'] : ['due', 'stored']
-  const { rows } = await sql<{ version: number }>`
+  const { rows } = await sql<{ version: number; state: string }>`
     with moved as (
       update jar set state = ${jarState}, version = version + 1
-        where id = ${jar.jarId} and state <> ${jarState} and state <> 'lost'
+        where ${wasDone} and id = ${jar.jarId} and state <> ${jarState} and state <> 'lost'
     )
-    update pull_jar set state = ${state}, version = version + 1, closed_at = null, closed_by = null, note = ''
+    update pull_jar set version = version + 1, note = ${note},
+        state = case when ${wasDone} then ${state} else state end,
+        closed_at = case when ${wasDone} then null else closed_at end,
+        closed_by = case when ${wasDone} then null else closed_by end
       where id = ${jar.id}
-      returning version
+      returning version, state
   `.execute(trx)
-  return { version: rows[0]!.version, state }
+  return rows[0]!
 }

@@ -46,3 +46,14 @@ export function refuseUndo(actor: Actor, jar: PullJar, saved: readonly SavedRead
       `With this save you said which of two readings of ${jar.code} counts. Correct it instead.`,
     )
 }
+
+/** The jar's note without what a save added to it; what others noted since stays. */
+export function noteWithout(now: string, { before, after }: { before: string; after: string }): string {
+  if (now === after) return before
+  const stood = before.split('\n')
+  const added = after.split('\n').filter((line) => !stood.includes(line))
+  return now
+    .split('\n')
+    .filter((line) => !added.includes(line))
+    .join('\n')
+}

@@ -7,6 +7,7 @@ import { getBatch } from '@/lib/batch/queries/get-batch'
 import { batchKey } from '@/lib/batch/keys'
 import { AppError } from '@/lib/http/errors'
 import { page } from '@/lib/http/page'
+import { readSegment } from '@/lib/address/rules'
 
 export const permission = 'batch.read'
 
@@ -18,12 +19,12 @@ type Props = {
 const parts: BatchPart[] = ['weighing', 'process', 'rest']
 
 export async function generateMetadata({ params }: Props): Promise<Metadata> {
-  return { title: decodeURIComponent((await params).code) }
+  return { title: readSegment((await params).code) }
 }
 
 export default async function BatchPage({ params, searchParams }: Props) {
   const { actor, db } = await page(permission)
-  const code = decodeURIComponent((await params).code)
+  const code = readSegment((await params).code)
   const query = await searchParams
   const batch = await getBatch(db, actor, code).catch((thrown: unknown) => {
     if (thrown instanceof AppError && thrown.status === 404) notFound()

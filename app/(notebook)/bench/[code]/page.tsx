@@ -8,17 +8,18 @@ import { todaysBench } from '@/lib/bench/queries/today'
 import { benchKeys } from '@/lib/bench/keys'
 import { AppError } from '@/lib/http/errors'
 import { page } from '@/lib/http/page'
+import { readSegment } from '@/lib/address/rules'
 
 export const permission = 'bench.read'
 
 type Props = { params: Promise<{ code: string }> }
 
 export async function generateMetadata({ params }: Props): Promise<Metadata> {
-  return { title: `Jar ${decodeURIComponent((await params).code)}` }
+  return { title: `Jar ${readSegment((await params).code)}` }
 }
 
 export default async function BenchJarPage({ params }: Props) {
-  const code = decodeURIComponent((await params).code)
+  const code = readSegment((await params).code)
   const { actor, db } = await page(permission)
   const bench = await todaysBench(db, actor)
   const jar = await getBenchJar(db, actor, code).catch((error: unknown) => {

@@ -8,6 +8,7 @@ import { formulaKey } from '@/lib/formula/keys'
 import { formulaPageQuery } from '@/lib/formula/schema'
 import { AppError } from '@/lib/http/errors'
 import { page } from '@/lib/http/page'
+import { readSegment } from '@/lib/address/rules'
 
 export const permission = 'formula.read'
 
@@ -19,12 +20,12 @@ type Props = {
 const parts: FormulaPart[] = ['lines', 'process', 'batches', 'versions']
 
 export async function generateMetadata({ params }: Props): Promise<Metadata> {
-  return { title: decodeURIComponent((await params).code) }
+  return { title: readSegment((await params).code) }
 }
 
 export default async function FormulaPage({ params, searchParams }: Props) {
   const { actor, db } = await page(permission)
-  const code = decodeURIComponent((await params).code)
+  const code = readSegment((await params).code)
   const query = await searchParams
   const { version } = formulaPageQuery.parse(query)
   const formula = await getFormula(db, actor, code, version).catch((thrown: unknown) => {

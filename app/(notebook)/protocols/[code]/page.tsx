@@ -2,6 +2,7 @@ import type { Metadata } from 'next'
 import { ProtocolView } from '@/components/protocol/protocol-view'
 import { may } from '@/lib/auth/permissions'
 import { page } from '@/lib/http/page'
+import { readSegment } from '@/lib/address/rules'
 import { getProtocol } from '@/lib/protocol/queries'
 import { found } from '../../studies/found'
 
@@ -13,12 +14,12 @@ type Props = {
 }
 
 export async function generateMetadata({ params }: Props): Promise<Metadata> {
-  return { title: decodeURIComponent((await params).code) }
+  return { title: readSegment((await params).code) }
 }
 
 export default async function ProtocolPage({ params, searchParams }: Props) {
   const { actor, db } = await page(permission)
-  const protocol = await found(getProtocol(db, actor, decodeURIComponent((await params).code)))
+  const protocol = await found(getProtocol(db, actor, readSegment((await params).code)))
   const number = Number((await searchParams)['version'])
   return (
     <ProtocolView

@@ -3,6 +3,7 @@ import { SWRConfig } from 'swr'
 import { studyRights } from '@/components/study/rights'
 import { StudySheet } from '@/components/study/study-sheet'
 import { page } from '@/lib/http/page'
+import { readSegment } from '@/lib/address/rules'
 import { getSheet } from '@/lib/study/queries/sheet'
 import { studyKeys } from '@/lib/study/keys'
 import { found } from '../found'
@@ -15,12 +16,12 @@ type Props = {
 }
 
 export async function generateMetadata({ params }: Props): Promise<Metadata> {
-  return { title: `${decodeURIComponent((await params).code)}, sheet` }
+  return { title: `${readSegment((await params).code)}, sheet` }
 }
 
 export default async function SheetPage({ params, searchParams }: Props) {
   const { actor, db } = await page(permission)
-  const code = decodeURIComponent((await params).code)
+  const code = readSegment((await params).code)
   const { batch } = await searchParams
   const sheet = await found(getSheet(db, actor, code))
   return (

@@ -10,6 +10,7 @@ import { innerWord } from '@/lib/formula/rules/finding'
 import { differenceQuery } from '@/lib/formula/schema'
 import { AppError } from '@/lib/http/errors'
 import { page } from '@/lib/http/page'
+import { readSegment } from '@/lib/address/rules'
 
 export const permission = 'formula.read'
 export const metadata: Metadata = { title: 'Difference of two versions' }
@@ -21,7 +22,7 @@ type Props = {
 
 export default async function DifferencePage({ params, searchParams }: Props) {
   const { actor, db } = await page(permission)
-  const code = decodeURIComponent((await params).code)
+  const code = readSegment((await params).code)
   const query = differenceQuery.parse(await searchParams)
   const found = await getDifference(db, actor, code, query).catch((thrown: unknown) => {
     if (thrown instanceof AppError && thrown.status === 404) return thrown

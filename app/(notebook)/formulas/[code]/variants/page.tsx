@@ -9,6 +9,7 @@ import { listTakenCodes } from '@/lib/formula/queries/list-taken-codes'
 import { formulaPageQuery } from '@/lib/formula/schema'
 import { AppError } from '@/lib/http/errors'
 import { page } from '@/lib/http/page'
+import { readSegment } from '@/lib/address/rules'
 
 export const permission = 'formula.write'
 export const metadata: Metadata = { title: 'A family of variants' }
@@ -20,7 +21,7 @@ type Props = {
 
 export default async function VariantsPage({ params, searchParams }: Props) {
   const { actor, db } = await page(permission)
-  const code = decodeURIComponent((await params).code)
+  const code = readSegment((await params).code)
   const { version } = formulaPageQuery.parse(await searchParams)
   const formula = await getFormula(db, actor, code, version).catch((thrown: unknown) => {
     if (thrown instanceof AppError && thrown.status === 404) notFound()

@@ -3,6 +3,7 @@ import { SWRConfig } from 'swr'
 import { studyRights } from '@/components/study/rights'
 import { StudyCurves } from '@/components/study/study-curves'
 import { page } from '@/lib/http/page'
+import { readSegment } from '@/lib/address/rules'
 import { getCurves } from '@/lib/study/queries/curves'
 import { studyKeys } from '@/lib/study/keys'
 import { curvesQuery } from '@/lib/study/schema'
@@ -16,12 +17,12 @@ type Props = {
 }
 
 export async function generateMetadata({ params }: Props): Promise<Metadata> {
-  return { title: `${decodeURIComponent((await params).code)}, curves` }
+  return { title: `${readSegment((await params).code)}, curves` }
 }
 
 export default async function CurvesPage({ params, searchParams }: Props) {
   const { actor, db } = await page(permission)
-  const code = decodeURIComponent((await params).code)
+  const code = readSegment((await params).code)
   const { batch, station, ...query } = await searchParams
   const { beside } = curvesQuery.parse(query)
   const curves = await found(getCurves(db, actor, code, beside))

@@ -3,6 +3,7 @@ import { studyRights } from '@/components/study/rights'
 import { StudyJars } from '@/components/study/study-jars'
 import { may } from '@/lib/auth/permissions'
 import { page } from '@/lib/http/page'
+import { readSegment } from '@/lib/address/rules'
 import { getLab } from '@/lib/lab/queries'
 import { listStudyJars } from '@/lib/study/queries/jars'
 import { jarList } from '@/lib/study/rules/jar-list'
@@ -16,12 +17,12 @@ type Props = {
 }
 
 export async function generateMetadata({ params }: Pick<Props, 'params'>): Promise<Metadata> {
-  return { title: `${decodeURIComponent((await params).code)}, jars` }
+  return { title: `${readSegment((await params).code)}, jars` }
 }
 
 export default async function JarsPage({ params, searchParams }: Props) {
   const { actor, db } = await page(permission)
-  const code = decodeURIComponent((await params).code)
+  const code = readSegment((await params).code)
   const query = jarList.query.parse(await searchParams)
   const jars = await found(listStudyJars(db, actor, code, query))
   const { timeZone } = await getLab(db)

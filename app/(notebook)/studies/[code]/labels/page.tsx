@@ -2,6 +2,7 @@ import type { Metadata } from 'next'
 import { labelOf } from '@/components/jar/label-of'
 import { StudyLabels } from '@/components/study/study-labels'
 import { page } from '@/lib/http/page'
+import { readSegment } from '@/lib/address/rules'
 import { getLabels } from '@/lib/label/queries'
 import { labelChoice } from '@/lib/label/schema'
 import { degrees } from '@/lib/study/rules/finding'
@@ -16,13 +17,13 @@ type Props = {
 }
 
 export async function generateMetadata({ params }: Props): Promise<Metadata> {
-  return { title: `${decodeURIComponent((await params).code)}, labels` }
+  return { title: `${readSegment((await params).code)}, labels` }
 }
 
 /** The address may ask for certain jars, so that whoever moved some comes here with their codes. */
 export default async function LabelsPage({ params, searchParams }: Props) {
   const { actor, db } = await page(permission)
-  const code = decodeURIComponent((await params).code)
+  const code = readSegment((await params).code)
   const asked = labelChoice.safeParse(await searchParams)
   const { jars, ownPack, ownGrid } = await found(getLabels(db, actor, code))
   return (

@@ -3,6 +3,7 @@ import { studyRights } from '@/components/study/rights'
 import { StudyReadings } from '@/components/study/study-readings'
 import { may } from '@/lib/auth/permissions'
 import { page } from '@/lib/http/page'
+import { readSegment } from '@/lib/address/rules'
 import { getLab } from '@/lib/lab/queries'
 import { listStudyReadings } from '@/lib/study/queries/readings'
 import { readingList } from '@/lib/study/rules/reading-list'
@@ -16,12 +17,12 @@ type Props = {
 }
 
 export async function generateMetadata({ params }: Pick<Props, 'params'>): Promise<Metadata> {
-  return { title: `${decodeURIComponent((await params).code)}, readings` }
+  return { title: `${readSegment((await params).code)}, readings` }
 }
 
 export default async function ReadingsPage({ params, searchParams }: Props) {
   const { actor, db } = await page(permission)
-  const code = decodeURIComponent((await params).code)
+  const code = readSegment((await params).code)
   const query = readingList.query.parse(await searchParams)
   const readings = await found(listStudyReadings(db, actor, code, query))
   const lab = await getLab(db)

@@ -2,6 +2,7 @@ import type { Metadata } from 'next'
 import { studyRights } from '@/components/study/rights'
 import { StudyRecord } from '@/components/study/study-record'
 import { page } from '@/lib/http/page'
+import { readSegment } from '@/lib/address/rules'
 import { getStudyHead, listStudyBatches } from '@/lib/study/queries/head'
 import { headOf } from '@/lib/study/queries/sheet'
 import { listTrail } from '@/lib/trail/queries'
@@ -16,12 +17,12 @@ type Props = {
 }
 
 export async function generateMetadata({ params }: Props): Promise<Metadata> {
-  return { title: `${decodeURIComponent((await params).code)}, record` }
+  return { title: `${readSegment((await params).code)}, record` }
 }
 
 export default async function RecordPage({ params, searchParams }: Props) {
   const { actor, db } = await page(permission)
-  const study = await found(getStudyHead(db, actor, decodeURIComponent((await params).code)))
+  const study = await found(getStudyHead(db, actor, readSegment((await params).code)))
   const { order, place } = trailList.query.parse(await searchParams)
   const query = { ...trailList.query.parse({ study: study.code }), order, place }
   const batches = await listStudyBatches(db, study.id)
