@@ -5,7 +5,7 @@ import { ByInstrument, FindJar } from '@/components/bench/later'
 import { DayHead } from '@/components/bench/day-head'
 import { HandOver } from '@/components/bench/hand-over'
 import { HandoverNotes } from '@/components/bench/handover-notes'
-import { codesKept } from '@/components/bench/kept-jars'
+import { settledHere } from '@/components/bench/kept-jars'
 import { useCalledJar } from '@/components/bench/use-called-jar'
 import { useLabelReader } from '@/components/bench/use-label-reader'
 import { useNow } from '@/components/bench/use-now'
@@ -39,7 +39,7 @@ export function BenchDay({ bench, person, outbox, isReady, onOpen, onChange }: P
   const jar = useCalledJar(bench, openJar)
   useLabelReader((text) => void jar.call(text))
   const openId = picked ?? first
-  const kept = codesKept(outbox.items)
+  const kept = settledHere(bench, outbox.items)
   return (
     <div className="mx-auto flex min-h-[calc(100dvh-64px)] max-w-[820px] flex-col">
       <DayHead bench={bench} outbox={outbox} isReady={isReady} />

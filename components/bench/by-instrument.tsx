@@ -2,7 +2,7 @@
 
 import { useState } from 'react'
 import type { BenchPerson } from '@/components/device/last-person'
-import { codesKept, partsKept } from '@/components/bench/kept-jars'
+import { partsKept, settledHere } from '@/components/bench/kept-jars'
 import { PartOfJar } from '@/components/bench/part-of-jar'
 import { TinyJar } from '@/components/bench/tiny-jar'
 import { walkSteps } from '@/components/bench/walk-steps'
@@ -28,12 +28,12 @@ export function ByInstrument({ bench, person, outbox, called, onCalled, onOpen, 
     photographed: [],
   })
   const [skipped, setSkipped] = useState<string[]>([])
-  const closed = codesKept(outbox.items)
+  const closed = settledHere(bench, outbox.items)
   const steps = walkSteps(
     bench,
     (jar, attribute) =>
       jar.read.includes(attribute) ||
-      closed.has(jar.code) ||
+      closed.has(jar.pullJarId) ||
       partsKept(outbox.items, jar.pullJarId).includes(attribute),
     person.mayAddPhotos,
   )

@@ -1,6 +1,5 @@
 'use client'
 
-import { useState } from 'react'
 import { DonePanel } from '@/components/bench/done-panel'
 import { FieldPanel, isOnKeys } from '@/components/bench/field-panel'
 import { JarHead } from '@/components/bench/jar-head'
@@ -8,7 +7,6 @@ import { JarNotices } from '@/components/bench/jar-notices'
 import { JarQuestions } from '@/components/bench/jar-questions'
 import type { JarScreenProps } from '@/components/bench/jar-screen'
 import { LayersPanel } from '@/components/bench/layers-panel'
-import { MissDialog } from '@/components/bench/miss-dialog'
 import { nextJar } from '@/components/bench/next-jar'
 import { OverviewPanel } from '@/components/bench/overview-panel'
 import { PaperTime, usePaper } from '@/components/bench/paper-switch'
@@ -19,14 +17,16 @@ import { TakeOut } from '@/components/bench/take-out'
 import { useAwake } from '@/components/bench/use-awake'
 import { useJarEntry } from '@/components/bench/use-jar-entry'
 import { WalkStrip } from '@/components/bench/walk-strip'
-import { toast } from '@/components/ui/toast'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 
-type Props = Omit<JarScreenProps, 'code'> & { jar: BenchJarPage }
+type Props = Omit<JarScreenProps, 'code'> & {
+  jar: BenchJarPage
+  /** The jar cannot be read; its version may be a later one than the page shows. */
+  onMiss: (versionNow: () => Promise<number>) => void
+}
 
 /** The jar that is in hand: its head, what it shows, its fields and the one being typed. */
-export function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }: Props) {
-  const [isMissing, setMissing] = useState(false)
+export function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange, onMiss }: Props) {
   const isDone = jar.state === 'done' || jar.state === 'missed'
   const isResting = jar.state === 'resting' && !jar.isReady
   const mayType = person.mayLog && !isDone && !isResting && !jar.isEarly && jar.isStudyRunning
@@ -53,7 +53,7 @@ export function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }
       <StationLine
         jar={jar}
         paper={mayType ? paper : null}
-        onMiss={mayType ? () => setMissing(true) : null}
+        onMiss={mayType ? () => onMiss(entry.versionNow) : null}
       />
       {mayType ? <PaperTime paper={paper} /> : null}
       <JarNotices
@@ -97,22 +97,6 @@ export function OpenJar({ jar, bench, person, outbox, onOpen, onWalk, onChange }
         </>
       ) : null}
       <JarQuestions jar={jar} person={person} entry={entry} />
-      {isMissing ? (
-        <MissDialog
-          jar={jar}
-          versionNow={entry.versionNow}
-          onClose={() => setMissing(false)}
-          onDone={(substitute) => {
-            setMissing(false)
-            if (substitute === undefined) {
-              toast(`${jar.name} is noted as not read.`, { density: 'bench' })
-              return goOn()
-            }
-            onChange()
-            onOpen(substitute)
-          }}
-        />
-      ) : null}
     </div>
   )
 }

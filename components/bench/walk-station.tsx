@@ -62,12 +62,12 @@ export function WalkStation({
               .map((jar) => (
                 <span
                   key={jar.pullJarId}
-                  className={kept.has(jar.code) ? 'border-x-2 border-b-2 border-ink px-0.5' : ''}
+                  className={kept.has(jar.pullJarId) ? 'border-x-2 border-b-2 border-ink px-0.5' : ''}
                 >
                   <TinyJar
                     standing={jar.standing}
                     layers={jar.layers}
-                    state={kept.has(jar.code) ? 'done' : jar.state}
+                    state={kept.has(jar.pullJarId) ? 'done' : jar.state}
                     height={isOpen ? 44 : 34}
                   />
                 </span>
@@ -100,7 +100,7 @@ export function WalkStation({
               <JarRow
                 key={jar.pullJarId}
                 jar={jar}
-                isKept={kept.has(jar.code)}
+                isKept={kept.has(jar.pullJarId)}
                 onOpen={onOpen}
                 now={now}
                 zone={zone}

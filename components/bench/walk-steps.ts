@@ -16,7 +16,12 @@ export function walkSteps(
   hasPhotos: boolean,
 ): WalkStep[] {
   const all = bench.stations.flatMap((station) => station.jars)
-  const open = all.filter((jar) => jar.state === 'due' || jar.state === 'resting')
+  const toRead = all.filter((jar) => jar.state === 'due' || jar.state === 'resting')
+  const isAsked = (jar: BenchJar) => jar.fields.some((field) => !isIn(jar, field.attribute))
+  // Asked for in two pulls it is read for the earlier one first.
+  const open = toRead.filter(
+    (jar) => !toRead.some((other) => other.code === jar.code && other.dueOn < jar.dueOn && isAsked(other)),
+  )
   const labels = new Map(open.flatMap((jar) => jar.fields.map((field) => [field.attribute, field.label])))
   const steps = [...labels].map(([key, label]): WalkStep => {
     const asked = open.filter((jar) => jar.fields.some((field) => field.attribute === key))

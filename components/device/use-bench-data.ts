@@ -6,9 +6,10 @@ import type { BenchDays } from '@/lib/bench/queries/days'
 import type { Bench } from '@/lib/bench/queries/today'
 import { benchKeys } from '@/lib/bench/keys'
 import { ClientError, fetcher } from '@/lib/http/fetcher'
-import { benchOn, labDayHere, pagesByCode, type KnownDays } from './bench-data'
+import { benchOn, labDayHere, type KnownDays } from './bench-data'
 import { useDevice } from './device-context'
 import { keepStartPhotos } from './start-photo'
+import { useRightPull } from './use-right-pull'
 
 /** Others' entries appear within five seconds. */
 const askEveryMs = 3_500
@@ -30,15 +31,16 @@ export function useBenchData(openCode: string | null) {
     code.current = openCode
   })
 
+  const { know, toShow } = useRightPull(openCode)
   const showPages = useCallback(
     (days: KnownDays, isNewer: boolean) => {
-      for (const [jarCode, page] of pagesByCode(days)) {
+      for (const [jarCode, pages] of know(days)) {
         const key = benchKeys.jar(jarCode)
         const isKnown = cache.get(key)?.data !== undefined || fallback[key] !== undefined
-        if (isNewer || !isKnown) void mutate(key, page, { revalidate: false })
+        if (isNewer || !isKnown) void mutate(key, toShow(pages), { revalidate: false })
       }
     },
-    [cache, fallback, mutate],
+    [cache, fallback, mutate, know, toShow],
   )
 
   const showBench = useCallback(
@@ -92,6 +94,7 @@ export function useBenchData(openCode: string | null) {
       const [kept, days] = await Promise.all([
         device.store.findData('bench').catch(() => undefined),
         device.store.findData('days').catch(() => undefined),
+        device.outbox.ready,
       ])
       if (days) showPages(days.data as KnownDays, false)
       if (kept && fallback[benchKeys.today] === undefined) {
