@@ -142,7 +142,7 @@ async function putAway(database, { place, draft }) {
 const subjectOf = ({ about, id }) => about.subject ?? about.pullJarId ?? id
 
 function post(item, personId) {
-  const isTimed = 'claimedAt' in item.body
+  const isTimed = 'claimedAt' in item.body || 'deviceNow' in item.body
   const body = isTimed ? { ...item.body, deviceNow: new Date().toISOString() } : item.body
   const headers = { accept: 'application/json', 'idempotency-key': item.key, 'stillstand-person': personId }
   if (!item.file) {

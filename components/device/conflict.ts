@@ -33,10 +33,11 @@ export function confirmed(item: OutboxItem): OutboxItem['body'] {
     ...one,
     isConfirmed: true,
   }))
+  if (!readings) return { ...item.body, isConfirmed: true }
   const missing = Object.keys(item.refusal?.fields ?? {}).flatMap((field) =>
     field.startsWith('missing.') ? [field.slice('missing.'.length)] : [],
   )
-  return { ...item.body, ...(readings ? { readings } : {}), leaveOut: missing }
+  return { ...item.body, readings, leaveOut: missing }
 }
 
 /** The same entry beside the other person's, and which counts. */
@@ -48,5 +49,16 @@ export function decided(item: OutboxItem, count: 'mine' | 'theirs', reason: stri
 /** The same entry at the thing as it is now. */
 export function atNewVersion(item: OutboxItem): OutboxItem['body'] | null {
   const { version } = (item.refusal?.detail ?? {}) as { version?: number }
-  return version === undefined ? null : { ...item.body, version }
+  return version === undefined ? null : withVersion(item.body, version)
+}
+
+/** What happened to a jar names the pull as it was shown; all else is about the thing itself. */
+export function withVersion(body: OutboxItem['body'], version: number): OutboxItem['body'] {
+  const pull = body['pull'] as { version: number } | null | undefined
+  return pull ? { ...body, pull: { ...pull, version } } : { ...body, version }
+}
+
+export function versionIn(body: OutboxItem['body']): unknown {
+  const pull = body['pull'] as { version: number } | null | undefined
+  return pull ? pull.version : body['version']
 }

@@ -1,6 +1,7 @@
 import { isSignedOut, keep } from '@/components/session/keep'
 import { newId } from '@/lib/db/id'
 import { ClientError, isPassing } from '@/lib/http/fetcher'
+import { versionIn, withVersion } from './conflict'
 import type { Drafts } from './drafts'
 import {
   laneOf,
@@ -184,8 +185,8 @@ export function makeOutbox(personId: string, store: Store, drafts: Drafts, tabs:
   /** Others only had the jar open meanwhile: nothing stands against it, so it goes out at the jar as it is now. */
   async function isRebased(item: OutboxItem, error: ClientError): Promise<boolean> {
     const { state: now, version } = (error.detail ?? {}) as { state?: string; version?: number }
-    if (error.code !== 'stale' || now !== 'due' || !version || version === item.body['version']) return false
-    await store.changeItem({ ...item, key: newId(), body: { ...item.body, version } })
+    if (error.code !== 'stale' || now !== 'due' || !version || version === versionIn(item.body)) return false
+    await store.changeItem({ ...item, key: newId(), body: withVersion(item.body, version) })
     await changed()
     return true
   }

@@ -13,7 +13,7 @@ export function postItem(
   personId: string,
   onProgress: (percent: number) => void,
 ): Promise<unknown> {
-  const isTimed = 'claimedAt' in item.body
+  const isTimed = 'claimedAt' in item.body || 'deviceNow' in item.body
   const body = isTimed ? { ...item.body, deviceNow: new Date().toISOString() } : item.body
   if (item.file) return postFile({ ...item, body }, item.file, personId, onProgress)
   return send(item.url, item.method, body, {

@@ -152,7 +152,7 @@ function entryOf({ detail }: Reading, values: Record<string, string>) {
       detail: {
         topMm: number('topMm'),
         bottomMm: number('bottomMm'),
-        ...(detail.totalMm === undefined ? {} : { totalMm: detail.totalMm }),
+        ...besideLayers(detail),
       },
     }
   }
@@ -167,6 +167,15 @@ function entryOf({ detail }: Reading, values: Record<string, string>) {
   return { typed: values['typed'] ?? '', detail: {} }
 }
 
+/** What was noted beside the layers stays as it was read. */
+function besideLayers({ totalMm, bleed, creamMm }: Reading['detail']) {
+  return {
+    ...(totalMm === undefined ? {} : { totalMm }),
+    ...(bleed === undefined ? {} : { bleed }),
+    ...(creamMm === undefined ? {} : { creamMm }),
+  }
+}
+
 /** Sends once; what was typed stays where it was refused. A 409 asks whether an unlikely value is so. */
 function useAct(onDone: () => void, close: () => void) {
   const [error, setError] = useState<unknown>(null)
@@ -176,7 +185,7 @@ function useAct(onDone: () => void, close: () => void) {
     error,
     busy,
     fields: refused?.fields ?? {},
-    isUnlikely: refused?.code === 'conflict' && refused.status === 409,
+    isUnlikely: refused?.code === 'confirm',
     async run(url: string, body: unknown, done: string) {
       setBusy(true)
       setError(null)

@@ -43,12 +43,12 @@ export async function logCalibration(
       calibratedAt: 'This time is still to come.',
     })
   }
-  if (input.dueOn <= calibratedAt.slice(0, 10)) {
+  const day = dayIn(instrument.zone, calibratedAt)
+  if (input.dueOn <= day) {
     throw refuse.invalid('The next calibration is due after this one. Correct the due date.', {
       dueOn: 'This is not after the calibration.',
     })
   }
-  const day = dayIn(instrument.zone, calibratedAt)
   const judged = judge(input, await findLots(trx, lotIdsOf(input.check)), day)
   const bad = { instrument, kind: 'calibration' as const, at: calibratedAt, day, sentence: judged.sentence }
   if (judged.result === 'doubtful') {

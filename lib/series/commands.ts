@@ -1,9 +1,11 @@
+import { sql } from 'kysely'
 import type { Actor } from '@/lib/auth/actor'
 import type { Trx } from '@/lib/db/client'
 import { newId } from '@/lib/db/id'
 import { keepFlags } from '@/lib/flag/commands/keep-flags'
 import { wantedFlags } from '@/lib/flag/rules/wanted'
 import { assignRepeats } from '@/lib/pull/commands/assign-repeats'
+import { pulledFor } from '@/lib/protocol/rules/plan'
 import type { SeriesFinding } from '@/lib/science/series'
 import { loadFrame, type Frame } from './queries/frame'
 import { assessStudy, type Assessed } from './rules/assess'
@@ -25,7 +27,7 @@ export async function recomputeSeries(trx: Trx, actor: Actor, studyId: string, s
   const frame = scope.frame ?? (await loadFrame(trx, studyId))
   const only = scope.only ? new Set(scope.only) : null
   const { assessed, shifted } = assessStudy(frame, only)
-  await upsertSeries(trx, studyId, assessed)
+  await upsertSeries(trx, frame, only, assessed)
   const { wanted, repeats } = await assignRepeats(trx, frame, wantedFlags(frame, assessed, shifted))
   const { raised, cleared } = await keepFlags(trx, actor, frame, wanted, only, frame.study.now)
   return {
@@ -63,9 +65,25 @@ export async function lockStudyOfPullJar(trx: Trx, pullJarId: string): Promise<s
   return study?.id ?? null
 }
 
-async function upsertSeries(trx: Trx, studyId: string, assessed: readonly Assessed[]): Promise<void> {
-  if (assessed.length === 0) return
+/** Series of which nothing can be told any more, their only readings being void, are none. */
+async function upsertSeries(
+  trx: Trx,
+  { study }: Frame,
+  only: ReadonlySet<string> | null,
+  assessed: readonly Assessed[],
+): Promise<void> {
+  const studyId = study.id
+  const told = assessed.map(({ unit }) => `${unit.batch.id} ${unit.station.id} ${unit.attribute}`)
+  const asked = pulledFor(study.plan).map((planned) => planned.attribute)
+  const untold = trx
+    .deleteFrom('series')
+    .where('studyId', '=', studyId)
+    .where('studyStationId', '=', sql<string>`any(${study.stations.map((one) => one.id)}::uuid[])`)
+    .where(sql<boolean>`batch_id || ' ' || study_station_id || ' ' || attribute <> all(${told}::text[])`)
+    .where('attribute', '=', sql<string>`any(${asked.filter((key) => !only || only.has(key))}::text[])`)
+  if (assessed.length === 0) return void (await untold.execute())
   await trx
+    .with('untold', () => untold)
     .insertInto('series')
     .values(
       assessed.map(({ unit, finding }) => ({

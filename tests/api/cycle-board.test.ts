@@ -169,7 +169,7 @@ describe('the freeze-thaw board', () => {
     const kept = await call(readRoute, {
       cookie: mada.cookie,
       params: { id: jar.pullJarId },
-      body: layered(study, jar, 0, 0),
+      body: { ...layered(study, jar, 0, 0), claimedAt: new Date().toISOString() },
     })
     expect(kept.body.readings[0].doubts).toMatchObject([{ reason: 'cycle' }])
   })

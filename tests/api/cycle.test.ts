@@ -89,12 +89,15 @@ it('refuses cycles at a station that has none, and QA', async () => {
 
 it('a cycle cut short is a doubt on the readings after it', async () => {
   await send(half({ cycle: 3, isFrozenThrough: false }))
-  const jar = jarAt(await askedJars(t.db, study.studyId), 5, 3, 'watch')
-  const kept = await call(read, {
-    cookie: technician.cookie,
-    params: { id: jar.pullJarId },
-    body: layered(study, jar, 0, 0),
-  })
+  const readAt = async (week: number, more: object) => {
+    const jar = jarAt(await askedJars(t.db, study.studyId), 5, week, 'watch')
+    const body = { ...layered(study, jar, 0, 0), ...more }
+    return call(read, { cookie: technician.cookie, params: { id: jar.pullJarId }, body })
+  }
+  // Told late, from paper: it was read before that half.
+  const before = await readAt(2, { isFromPaper: true })
+  expect(before.body.readings[0].doubts).toEqual([])
+  const kept = await readAt(3, { claimedAt: new Date().toISOString() })
   expect(kept.body.readings[0].doubts).toMatchObject([
     { reason: 'cycle', sentence: expect.stringMatching(/Cycle 3/) },
   ])

@@ -294,6 +294,29 @@ describe('lots of buffers, and calibrations made with them', () => {
     expect(opened.body.sentence).toContain('keeps 60 days')
   })
 
+  it('what is told late is judged by the calibration that held when it was read, not by the newest', async () => {
+    const at25 = (slope: number) => [
+      { buffer: 'phthalate', mV: slope * (7 - 4.005) },
+      { buffer: 'borax', mV: slope * (7 - 9.18) },
+    ]
+    const bad = await calibrate(at25(50), { calibratedAt: weeks(0.5) })
+    expect(bad.body.result).toBe('doubtful')
+    const short = { calibratedAt: weeks(1.5), dueOn: weeks(2.6).slice(0, 10) }
+    expect((await calibrate(at25(59.16), short)).body.result).toBe('good')
+    expect((await calibrate(at25(59.16), { calibratedAt: weeks(3.5) })).body.result).toBe('good')
+    const doubtsIn = async (week: number) => {
+      const { readings } = await readPh(week)
+      return readings.find((one: { attribute: string }) => one.attribute === 'ph').doubts
+    }
+    expect(await doubtsIn(1)).toMatchObject([
+      { reason: 'calibration', sentence: expect.stringMatching(/doubtful/) },
+    ])
+    expect(await doubtsIn(2)).toEqual([])
+    expect(await doubtsIn(3)).toMatchObject([
+      { reason: 'calibration', sentence: expect.stringMatching(/was due on/) },
+    ])
+  })
+
   it('a refusal names the field in words and stands at it', async () => {
     const refused = await calibrate([
       { buffer: 'phthalate', mV: null },

@@ -2,6 +2,7 @@ import { sql } from 'kysely'
 import type { Actor } from '@/lib/auth/actor'
 import type { Db, Trx } from '@/lib/db/client'
 import { getLabDay } from '@/lib/bench/queries/lab-day'
+import { doubtsOf } from '@/lib/reading/queries/doubts'
 
 export type DayReading = {
   id: string
@@ -47,14 +48,17 @@ export type DayOnRecord = Awaited<ReturnType<typeof getDay>>
 /** A day as QA reads it: every entry, the superseded and void ones too, and who has reviewed what of it. */
 export async function getDay(db: Db | Trx, actor: Actor, day: string) {
   const { zone } = await getLabDay(db)
+  // As a range, which an index serves.
+  const within = (
+    column: string,
+  ) => sql<boolean>`${sql.ref(column)} >= (${day}::date::timestamp at time zone ${zone})
+    and ${sql.ref(column)} < ((${day}::date + 1)::timestamp at time zone ${zone})`
   const { rows: readings } = await sql<DayReading & { recordedBy: string }>`
-    select r.id, r.attribute, r.replicate, r.value, r.word, r.typed, r.is_void, r.supersedes_id, r.reason, r.doubts,
+    select r.id, r.attribute, r.replicate, r.value, r.word, r.typed, r.is_void, r.supersedes_id, r.reason, ${doubtsOf('r')} as doubts,
       coalesce((r.detail ->> 'isFromPaper')::boolean, false) as is_from_paper, r.measured_at, r.recorded_at,
       p.initials as by, r.recorded_by, r.pull_jar_id
     from reading r join person p on p.id = r.recorded_by
-    where r.pull_jar_id is not null
-      and r.measured_at >= (${day}::date::timestamp at time zone ${zone})
-      and r.measured_at < ((${day}::date + 1)::timestamp at time zone ${zone})
+    where r.pull_jar_id is not null and ${within('r.measured_at')}
     order by r.recorded_at, r.id
   `.execute(db)
   const { rows: jars } = await sql<DayJar>`
@@ -76,12 +80,12 @@ export async function getDay(db: Db | Trx, actor: Actor, day: string) {
       join jar on jar.id = m.jar_id
       join study on study.id = m.study_id
       join person p on p.id = m.recorded_by
-    where (m.happened_at at time zone ${zone})::date = ${day}::date
+    where ${within('m.happened_at')}
     order by m.recorded_at, m.id
   `.execute(db)
   const { rows: photos } = await sql<{ id: string; code: string; pullJarId: string | null }>`
     select photo.id, jar.code, photo.pull_jar_id from photo join jar on jar.id = photo.jar_id
-    where (photo.taken_at at time zone ${zone})::date = ${day}::date order by photo.taken_at, photo.id limit 300
+    where ${within('photo.taken_at')} order by photo.taken_at, photo.id limit 300
   `.execute(db)
   const reviews = await db
     .selectFrom('dayReview as d')

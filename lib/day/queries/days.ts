@@ -24,7 +24,7 @@ export async function listDays(db: Db, _actor: Actor): Promise<EnteredDay[]> {
   const { rows } = await sql<EnteredDay>`
     with entry as (
       select r.id, (r.measured_at at time zone ${zone})::date as day, r.recorded_by as person_id,
-        r.doubts <> '[]' as is_doubted, r.supersedes_id is not null as is_change, false as is_mishap, false as is_missed
+        (r.doubts <> '[]' or exists (select from reading_doubt d where d.reading_id = r.id)) as is_doubted, r.supersedes_id is not null as is_change, false as is_mishap, false as is_missed
       from reading r where r.pull_jar_id is not null and r.measured_at > ${today}::date - 120
       union all
       select m.id, (m.happened_at at time zone ${zone})::date, m.recorded_by, false, false, true, m.kind <> 'pulled early'

@@ -1,8 +1,30 @@
 import type { EntryDoubt } from '@/lib/reading/rules/entry-doubts'
 import { spokenDay } from '@/lib/study/rules/calendar'
 
-/** A calibration or a daily check, with what it showed. */
-export type InstrumentEvent = { kind: 'calibration' | 'check'; at: string; result: string; sentence: string }
+/** A calibration or a daily check, with what it showed; a calibration holds until it is due again. */
+export type InstrumentEvent = {
+  kind: 'calibration' | 'check'
+  at: string
+  result: string
+  sentence: string
+  dueOn?: string | null
+}
+
+/**
+ * The calibration that held when something was read: the last one until then, for what is told later belongs to its own
+ * time. What was read before the first one on record goes by that; nulls where there is none.
+ */
+export function calibrationAt(
+  { events }: { events: readonly InstrumentEvent[] },
+  measuredAt: string,
+): { dueOn: string | null; result: string | null } {
+  const calibrations = events
+    .filter((event) => event.kind === 'calibration')
+    .toSorted((a, b) => Date.parse(a.at) - Date.parse(b.at))
+  const held =
+    calibrations.findLast((event) => Date.parse(event.at) <= Date.parse(measuredAt)) ?? calibrations[0]
+  return { dueOn: held?.dueOn ?? null, result: held?.result ?? null }
+}
 
 /** Doubts on readings that a later calibration or check brings are told apart from those known at the time. */
 export const laterCheck = 'later check'

@@ -17,7 +17,12 @@ const kinds = ['photoLines', 'photoColour', 'photoDrops'] as const
  * colour's patches are read from the copy itself. A photo that has not arrived yet is no reason to refuse a reading: it
  * waits on the device that took it, whose own patches count until somebody looks.
  */
-export async function readOnPhotos(db: Db, pullJarId: string, entries: Entry[]): Promise<Entry[]> {
+export async function readOnPhotos<E extends Pick<Entry, 'detail'>>(
+  db: Db,
+  pullJarId: string,
+  entries: E[],
+  at = (index: number) => `readings.${index}.`,
+): Promise<E[]> {
   const marks = entries.flatMap(({ detail }) => kinds.flatMap((kind) => detail[kind] ?? []))
   if (marks.length === 0) return entries
   const photos = await db
@@ -40,7 +45,7 @@ export async function readOnPhotos(db: Db, pullJarId: string, entries: Entry[]):
     for (const kind of kinds) {
       const mark = detail[kind]
       const photo = mark && photoOf(mark.photoId)
-      const path = `readings.${index}.detail.${kind}`
+      const path = `${at(index)}detail.${kind}`
       if (photo?.isOther)
         throw refuse.invalid('This was measured on a photo of another jar. Measure anew.', {
           [path]: 'A photo of another jar.',

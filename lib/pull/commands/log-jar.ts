@@ -11,7 +11,14 @@ import { findPullJar, type PullJar } from '../queries/pull-jar'
 import { askFirst, judgeEntries } from '../rules/judge-entries'
 import { isKeptBefore } from '../rules/known-entries'
 import { isAllRead, missingAttributes, readEntries, type ReadEntry } from '../rules/read-entries'
-import { keepInFrame, readingRows, standingIn, voidOf, type ReadingRow } from '../rules/reading-rows'
+import {
+  keepInFrame,
+  outvoted,
+  readingRows,
+  standingIn,
+  voidOf,
+  type ReadingRow,
+} from '../rules/reading-rows'
 import { refuseAlreadyRead, refuseOver, refuseStale, refuseTooEarly } from '../rules/refusals'
 import { closeJar, keepOpen } from './close-jar'
 
@@ -71,11 +78,12 @@ export async function logJar(trx: Trx, actor: Actor, input: JarToLog): Promise<L
   const rows = readingRows(jar, frame, actor, input, entries, { doubts, measuredAt, clock })
   const isVoided = (row: ReadingRow) =>
     isTheirs && (isRead || standingIn(jar, frame, row.attribute, row.replicate) !== undefined)
+  const voidsOfTheirs = outvoted(jar, frame, actor, input, rows)
   if (rows.length > 0) {
     const voids = rows.filter(isVoided).map((row) => voidOf(row, input.resolution!.reason))
     await trx
       .insertInto('reading')
-      .values([...rows, ...voids])
+      .values([...rows, ...voids, ...voidsOfTheirs])
       .execute()
   }
   const closes = isRead || !input.isPartial || isAllRead(jar, readNow)
@@ -84,7 +92,7 @@ export async function logJar(trx: Trx, actor: Actor, input: JarToLog): Promise<L
     ? await closeJar(trx, actor, jar, input, leftOut)
     : await keepOpen(trx, actor, jar, input)
   const counting = rows.filter((row) => !isVoided(row))
-  keepInFrame(frame, jar, counting, doubts, closes)
+  keepInFrame(frame, jar, counting, doubts, closes, voidsOfTheirs)
   const recomputed = await recomputeSeries(trx, actor, jar.studyId, {
     only: [...new Set(entries.map(({ entry }) => entry.attribute))],
     frame,

@@ -7,6 +7,7 @@ import { lockStudyOfPullJar, recomputeSeries } from '@/lib/series/commands'
 import { findPullJar, type PullJar } from '../queries/pull-jar'
 import { isUndone, noteWithout, refuseUndo, undoneReason, type SavedReading } from '../rules/undo'
 import type { UndoneSave } from '../schema'
+import { takeRepeatsBack } from './take-repeats-back'
 
 /**
  * Takes one save back: its readings are voided and stay on record, the jar is due or resting again, spare jars that it
@@ -56,24 +57,6 @@ async function listSaved(trx: Trx, pullJarId: string, ids: readonly string[]) {
     .where('r.pullJarId', '=', pullJarId)
     .where('r.id', 'in', [...ids])
     .execute()
-}
-
-/** Codes of the spare jars that are at rest again. What was read, opened by a photo or given up stays. */
-async function takeRepeatsBack(trx: Trx, jar: PullJar, attributes: readonly string[]): Promise<string[]> {
-  const { rows } = await sql<{ code: string }>`
-    with gone as (
-      delete from pull_jar pj where pj.repeat_of = ${jar.repeatOf ?? jar.id} and pj.id <> ${jar.id}
-        and pj.attribute = any(${attributes as string[]}) and pj.state in ('due', 'resting')
-        and not exists (select from reading r where r.pull_jar_id = pj.id)
-        and not exists (select from photo p where p.pull_jar_id = pj.id)
-      returning pj.jar_id
-    ), moved as (
-      update jar set state = 'stored', version = version + 1
-        where id in (select jar_id from gone) and state = 'resting'
-    )
-    select jar.code from jar where jar.id in (select jar_id from gone) order by jar.code
-  `.execute(trx)
-  return rows.map((row) => row.code)
 }
 
 /** The trail knows what the jar's note was before this save and what it made of it. */

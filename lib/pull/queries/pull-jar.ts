@@ -2,23 +2,14 @@ import { sql } from 'kysely'
 import { isCurrentStep } from '@/lib/cycle/queries/current'
 import type { Db, Trx } from '@/lib/db/client'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
-import type { InstrumentEvent } from '@/lib/instrument/rules/trust'
+import { usedInstruments } from '@/lib/instrument/queries/used'
 import type { JarStay } from '@/lib/station/rules/moves'
 
-export type UsedInstrument = {
-  id: string
-  code: string
-  kind: string
-  spindles: { name: string; constant: number }[]
-  dueOn: string | null
-  result: string | null
-  /** Newest calibrations and daily checks. */
-  events: InstrumentEvent[]
-}
 export type CycleHalf = {
   id: string
   cycle: number
   half: string
+  endedAt: string
   reachedC: number | null
   coreC: number | null
   isFrozenThrough: boolean | null
@@ -40,15 +31,6 @@ export type KeptEntry = {
 }
 
 type Sent = { instrumentIds?: string[]; entryIds?: string[] }
-
-const instrumentEvents = sql`(select coalesce(jsonb_agg(jsonb_build_object('kind', e.kind, 'at', e.at, 'result', e.result,
-    'sentence', e.sentence)), '[]') from (
-      select 'calibration' as kind, calibrated_at as at, result, coalesce(detail ->> 'sentence', '') as sentence
-        from calibration where instrument_id = i.id
-      union all
-      select 'check', checked_at, result, coalesce(detail ->> 'sentence', '')
-        from instrument_check where instrument_id = i.id
-      order by at desc limit 60) e)`
 
 /** One jar asked for in a pull, with all that a reading of it is judged by. */
 export async function findPullJar(
@@ -115,13 +97,7 @@ export async function findPullJar(
     .select([
       sql<ProtocolPlan>`study.plan`.as('plan'),
       sql<string>`app_now()`.as('now'),
-      sql<
-        UsedInstrument[]
-      >`(select coalesce(jsonb_agg(jsonb_build_object('id', i.id, 'code', i.code, 'kind', i.kind,
-          'spindles', i.spindles, 'dueOn', c.due_on, 'result', c.result, 'events', ${instrumentEvents})), '[]')
-        from instrument i left join lateral (select due_on, result from calibration
-          where instrument_id = i.id order by calibrated_at desc, id desc limit 1) c on true
-        where i.id = any(${instrumentIds}::uuid[]))`.as('instruments'),
+      usedInstruments(sql`i.id = any(${instrumentIds}::uuid[])`).as('instruments'),
       sql<KeptEntry[]>`(select coalesce(jsonb_agg(jsonb_build_object('id', r.id, 'pullJarId', r.pull_jar_id,
           'recordedBy', r.recorded_by, 'attribute', r.attribute, 'replicate', r.replicate, 'value', r.value,
           'typed', r.typed, 'doubts', r.doubts, 'measuredAt', r.measured_at) order by r.id), '[]')
@@ -132,8 +108,8 @@ export async function findPullJar(
       sql<
         CycleHalf[]
       >`(select coalesce(jsonb_agg(jsonb_build_object('id', step.id, 'cycle', step.cycle, 'half', step.half,
-          'reachedC', step.reached_c, 'coreC', step.core_c, 'isFrozenThrough', step.is_frozen_through,
-          'hours', extract(epoch from step.ended_at - step.begun_at) / 3600)), '[]')
+          'endedAt', step.ended_at, 'reachedC', step.reached_c, 'coreC', step.core_c,
+          'isFrozenThrough', step.is_frozen_through, 'hours', extract(epoch from step.ended_at - step.begun_at) / 3600)), '[]')
         from cycle_step step where step.study_station_id = ss.id and ${isCurrentStep('step')})`.as(
         'cycleHalves',
       ),

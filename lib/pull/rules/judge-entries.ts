@@ -1,15 +1,13 @@
 import { cycleDoubts } from '@/lib/cycle/rules/shortfall'
 import { AppError } from '@/lib/http/errors'
-import { checkDoubts } from '@/lib/instrument/rules/trust'
 import { type AttributeKey, attributeName } from '@/lib/reading/schema/attributes'
-import { conditionDoubts, valueDoubts, type EntryDoubt } from '@/lib/reading/rules/entry-doubts'
-import { askedConditions, conditionsIn } from '@/lib/reading/rules/conditions'
+import { valueDoubts, type EntryDoubt } from '@/lib/reading/rules/entry-doubts'
+import { usedDoubts } from '@/lib/reading/rules/used-doubts'
 import { weeksSince } from '@/lib/science/months'
 import type { Frame } from '@/lib/series/queries/frame'
 import { seriesUnits } from '@/lib/series/rules/input'
 import { sentenceContext, stationWords } from '@/lib/series/rules/spoken'
 import { placeDoubts } from '@/lib/station/rules/moves'
-import { dayIn } from '@/lib/study/rules/calendar'
 import type { PullJar } from '../queries/pull-jar'
 import type { ReadEntry } from './read-entries'
 
@@ -32,8 +30,10 @@ export function judgeEntries(
   const units = seriesUnits(frame, keys, [])
   const station = frame.study.stations.find((one) => one.id === jar.studyStationId)!
   const planned = jar.plan.stations[jar.position]
+  // What is told late, from paper or without network, is doubted by what lay before it.
+  const halves = jar.cycleHalves.filter((half) => Date.parse(half.endedAt) < Date.parse(measuredAt))
   const common = [
-    ...(jar.isFreezeThaw ? cycleDoubts(jar, jar.cycleHalves, planned?.cycle) : []),
+    ...(jar.isFreezeThaw ? cycleDoubts(jar, halves, planned?.cycle) : []),
     ...placeDoubts(
       { ...jar, kind: jar.stationKind, isLit: planned?.light !== undefined },
       jar.stays,
@@ -67,12 +67,10 @@ export function judgeEntries(
     for (const { entry, path, planned: asked, instrument, read } of own) {
       const found = [
         ...ofValue.map(({ reason, sentence }) => ({ reason, sentence })),
-        ...conditionDoubts(
-          { instrument, ...conditionsIn(read.detail) },
-          askedConditions(initialDetail(frame, jar, key), asked),
-          dayIn(frame.study.zone, measuredAt),
-        ),
-        ...(instrument ? checkDoubts(instrument, measuredAt, (at) => dayIn(frame.study.zone, at)) : []),
+        ...usedDoubts({
+          ...{ instrument, detail: read.detail, initial: initialDetail(frame, jar, key), planned: asked },
+          ...{ measuredAt, zone: frame.study.zone },
+        }),
         ...common,
       ]
       if (found.length > 0) doubts.set(entry.id, found)

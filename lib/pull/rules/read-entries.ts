@@ -7,7 +7,8 @@ import { ImpossibleEntry, type EntryValue } from '@/lib/reading/rules/impossible
 import { valueOf } from '@/lib/reading/rules/value'
 import type { Frame } from '@/lib/series/queries/frame'
 import { startOf } from '@/lib/series/rules/input'
-import type { PullJar, UsedInstrument } from '../queries/pull-jar'
+import type { UsedInstrument } from '@/lib/instrument/queries/used'
+import type { PullJar } from '../queries/pull-jar'
 
 export type ReadEntry = {
   entry: Entry

@@ -1,5 +1,6 @@
 import type { Actor } from '@/lib/auth/actor'
 import { newId } from '@/lib/db/id'
+import type { AttributeKey } from '@/lib/reading/schema/attributes'
 import type { JarToLog } from '@/lib/reading/schema/entry'
 import type { Frame } from '@/lib/series/queries/frame'
 import { dayIn } from '@/lib/study/rules/calendar'
@@ -73,6 +74,39 @@ export function voidOf(row: ReadingRow, reason: string): ReadingRow {
   }
 }
 
+/** Replicates of theirs beside which mine has none: where mine counts, they do not. A part leaves them to what is read next. */
+export function outvoted(
+  jar: PullJar,
+  frame: Frame,
+  actor: Actor,
+  { resolution, isPartial }: JarToLog,
+  rows: readonly ReadingRow[],
+): ReadingRow[] {
+  if (resolution?.count !== 'mine' || isPartial) return []
+  const superseded = new Set(rows.map((row) => row.supersedesId))
+  const theirs = frame.readings.filter(
+    (row) =>
+      row.pullJarId === jar.id &&
+      row.recordedBy !== actor.personId &&
+      !superseded.has(row.id) &&
+      rows.some((mine) => mine.attribute === row.attribute),
+  )
+  return theirs.map((row) =>
+    voidOf(
+      {
+        ...{ id: row.id, studyId: jar.studyId, batchId: jar.batchId, studyStationId: jar.studyStationId },
+        ...{ pullJarId: jar.id, jarId: jar.jarId, replicate: row.replicate },
+        attribute: row.attribute as AttributeKey,
+        ...{ value: row.value, word: row.word, typed: row.typed, detail: '{}', doubts: '[]' },
+        ...{ instrumentId: row.instrumentId, isVoid: false, supersedesId: null, reason: null },
+        ...{ measuredAt: row.measuredAt, claimedAt: row.claimedAt ?? row.measuredAt },
+        recordedBy: actor.personId,
+      },
+      resolution.reason,
+    ),
+  )
+}
+
 /** The series are computed from what the database now holds, without asking it again. */
 export function keepInFrame(
   frame: Frame,
@@ -80,8 +114,11 @@ export function keepInFrame(
   rows: readonly ReadingRow[],
   doubts: Doubted,
   isClosed: boolean,
+  voids: readonly ReadingRow[] = [],
 ): void {
-  const superseded = new Set(rows.flatMap((row) => (row.supersedesId ? [row.supersedesId] : [])))
+  const superseded = new Set(
+    [...rows, ...voids].flatMap((row) => (row.supersedesId ? [row.supersedesId] : [])),
+  )
   const kept = frame.readings.filter((row) => !superseded.has(row.id))
   const added = rows.map((row) => ({
     ...row,

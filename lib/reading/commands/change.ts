@@ -1,19 +1,19 @@
 import type { Actor } from '@/lib/auth/actor'
 import type { Trx } from '@/lib/db/client'
-import { AppError, refuse } from '@/lib/http/errors'
-import { torqueDoubt } from '@/lib/science/viscosity'
-import { lockStudy, recomputeSeries } from '@/lib/series/commands'
-import { loadFrame } from '@/lib/series/queries/frame'
-import { seriesUnits } from '@/lib/series/rules/input'
-import { sentenceContext } from '@/lib/series/rules/spoken'
+import { refuse } from '@/lib/http/errors'
+import { readOnPhotos } from '@/lib/photo/queries/of-jar'
+import { pulledFor } from '@/lib/protocol/rules/plan'
+import { takeUnwantedBack } from '@/lib/pull/commands/take-repeats-back'
+import { lockStudy, recomputeSeries, type Recomputed } from '@/lib/series/commands'
+import { inSentence } from '@/lib/study/rules/finding'
+import { judgeInstead } from './judge-instead'
 import { refuseVoidOfStart, retellFromInitial } from './retell'
 import { findReading, type ReadingRow } from '../queries/one'
-import { valueDoubts, type EntryDoubt } from '../rules/entry-doubts'
-import { conditionKeys } from '../rules/conditions'
+import { ImpossibleEntry } from '../rules/impossible-entry'
+import { askInstead, doubtsInstead, keptConditions, keptNotes } from '../rules/instead'
 import { refuseChange } from '../rules/may-change'
-import { ImpossibleEntry, type EntryValue } from '../rules/impossible-entry'
 import { valueOf } from '../rules/value'
-import type { AttributeKey } from '../schema/attributes'
+import { attributeName, type AttributeKey } from '../schema/attributes'
 import type { Correction, Voiding } from '../schema/change'
 
 /** A new reading takes the place of this one; both stay on record, and the reason with them. */
@@ -21,8 +21,12 @@ export async function correctReading(trx: Trx, actor: Actor, readingId: string, 
   const reading = await claimReading(trx, actor, readingId, input.id, input.instrumentId ?? null)
   if (reading.newerId === input.id) return { id: input.id, supersedesId: readingId, ...nothingNew }
   refuseChange(actor, reading)
+  await refusePhotoOfOther(trx, reading, input)
   const read = valueInstead(reading, input)
-  if (!input.isConfirmed) await askAboutValue(trx, reading, read)
+  const ofValue = await judgeInstead(trx, reading, read)
+  if (!input.isConfirmed) askInstead(reading, ofValue)
+  const detail = { ...keptNotes(reading), ...read.detail }
+  const stands = await standsOnStart(trx, reading)
   await trx
     .insertInto('reading')
     .values({
@@ -31,14 +35,19 @@ export async function correctReading(trx: Trx, actor: Actor, readingId: string, 
       value: read.value,
       word: read.word,
       typed: input.typed,
-      detail: JSON.stringify({ ...keptDetail(reading), ...read.detail }),
+      detail: JSON.stringify(detail),
       instrumentId: input.instrumentId ?? reading.instrumentId,
-      doubts: JSON.stringify(doubtsInstead(reading, read.detail)),
+      doubts: JSON.stringify(doubtsInstead(reading, detail, ofValue)),
       reason: input.reason,
     })
     .execute()
   await retellFromInitial(trx, actor, reading, input.reason)
-  return { id: input.id, supersedesId: readingId, ...(await recompute(trx, actor, reading)) }
+  const recomputed = await recompute(trx, actor, reading)
+  if (stands && !isTold(reading, recomputed)) {
+    const sentence = `With ${input.typed} at the start, ${attributeName(reading.attribute)} has no band to stand in, so nothing could be said of it any more. Check the number.`
+    throw refuse.invalid(sentence, { typed: sentence })
+  }
+  return { id: input.id, supersedesId: readingId, ...recomputed }
 }
 
 /** The reading stays on record and counts no more. */
@@ -47,11 +56,18 @@ export async function voidReading(trx: Trx, actor: Actor, readingId: string, inp
   if (reading.newerId === input.id) return { id: input.id, supersedesId: readingId, ...nothingNew }
   refuseChange(actor, reading)
   await refuseVoidOfStart(trx, reading)
+  const stands = await standsOnStart(trx, reading)
   await trx
     .insertInto('reading')
     .values({ ...placeOf(reading, actor), id: input.id, typed: '', isVoid: true, reason: input.reason })
     .execute()
-  return { id: input.id, supersedesId: readingId, ...(await recompute(trx, actor, reading)) }
+  const recomputed = await recompute(trx, actor, reading)
+  if (stands && !isTold(reading, recomputed)) {
+    throw refuse.conflict(
+      `This is the only initial of ${inSentence(reading.attribute)}, and all that is said of it since rests on it. Correct it instead.`,
+    )
+  }
+  return { id: input.id, supersedesId: readingId, ...recomputed }
 }
 
 /** Looked up, its study locked, and looked up again: what another did while we waited is then seen. */
@@ -88,7 +104,7 @@ function valueInstead(reading: ReadingRow, input: Correction) {
   const planned = reading.plan.attributes.find((one) => one.attribute === attribute) ?? null
   try {
     return valueOf(
-      { attribute, typed: input.typed, detail: input.detail },
+      { attribute, typed: input.typed, detail: { ...keptConditions(reading), ...input.detail } },
       {
         planned,
         jar: {
@@ -96,7 +112,7 @@ function valueInstead(reading: ReadingRow, input: Correction) {
           grossG: reading.grossG,
           fillHeightMm: reading.fillHeightMm ?? reading.plan.fillHeightMm,
         },
-        spindles: reading.spindles ?? [],
+        spindles: reading.instruments[0]?.spindles ?? [],
         last: reading.value,
         initial: reading.studyStationId === null ? 'self' : reading.initialDetail,
         emulsionType: reading.emulsionType,
@@ -108,53 +124,38 @@ function valueInstead(reading: ReadingRow, input: Correction) {
   }
 }
 
-/** What merely looks unlikely is asked about once, as at the first entry. */
-async function askAboutValue(trx: Trx, reading: ReadingRow, read: EntryValue): Promise<void> {
-  if (reading.studyStationId === null) return
-  const frame = await loadFrame(trx, reading.studyId)
-  const unit = seriesUnits(frame, new Set([reading.attribute]), []).find(
-    (one) => one.batch.id === reading.batchId && one.station.id === reading.studyStationId,
-  )
-  const own = unit?.jars.find((jar) => jar.ids.includes(reading.id))
-  if (!unit || !own) return
-  const torquePercent = read.detail['torquePercent']
-  const [first] = valueDoubts(
-    { ...unit.input, readings: unit.input.readings.filter((other) => other.day !== own.day) },
-    {
-      time: unit.input.readings.find((other) => other.id === own.id)!.time,
-      values: own.rows.map((row) => (row.id === reading.id ? read.value : row.value!)),
-      isRepeat: own.rows[0]!.repeatOf !== null,
-      ...(typeof torquePercent === 'number' ? { torquePercent } : {}),
-    },
-    sentenceContext(frame.study, unit.station, unit.attribute),
-  )
-  if (!first) return
-  const { sentence } = first
-  throw new AppError(409, 'confirm', `${sentence} Is it so?`, {
-    fields: { typed: sentence },
-    detail: {
-      questions: [{ field: 'typed', attribute: reading.attribute, readingId: reading.id, sentence }],
-    },
-  })
-}
-
-/** How it was come by, where the correction says nothing else: one corrects what was read, not how. */
-function keptDetail({ attribute, detail }: ReadingRow): Record<string, unknown> {
-  const kept = ['method', 'clock', ...conditionKeys(attribute)]
-  return Object.fromEntries(kept.filter((key) => key in detail).map((key) => [key, detail[key]]))
-}
-
-/** Conditions stay as they were; the torque is what is typed now. */
-function doubtsInstead(reading: ReadingRow, detail: Record<string, unknown>): EntryDoubt[] {
-  const kept = reading.doubts.filter(
-    ({ reason }) => reason !== 'torque' && reason !== 'jump' && reason !== 'spread',
-  )
-  const torque = typeof detail['torquePercent'] === 'number' ? torqueDoubt(detail['torquePercent']) : null
-  return torque ? [...kept, { reason: 'torque', sentence: `${torque}. Check spindle and speed.` }] : kept
-}
-
 const nothingNew = { series: [], raised: [], cleared: [], repeats: [] }
 
-function recompute(trx: Trx, actor: Actor, reading: ReadingRow) {
-  return recomputeSeries(trx, actor, reading.studyId, { only: [reading.attribute] })
+async function recompute(trx: Trx, actor: Actor, reading: ReadingRow) {
+  const recomputed = await recomputeSeries(trx, actor, reading.studyId, { only: [reading.attribute] })
+  // A spare jar that the slip had called for is left alone.
+  if (reading.pullJarId) await takeUnwantedBack(trx, reading.pullJarId, reading.attribute)
+  return recomputed
+}
+
+/** Whether series of this batch are told from this initial. */
+async function standsOnStart(trx: Trx, reading: ReadingRow): Promise<boolean> {
+  const isAsked = pulledFor(reading.plan).some((planned) => planned.attribute === reading.attribute)
+  if (reading.studyStationId !== null || !isAsked) return false
+  const series = await trx
+    .selectFrom('series')
+    .select('id')
+    .where('studyId', '=', reading.studyId)
+    .where('batchId', '=', reading.batchId)
+    .where('attribute', '=', reading.attribute)
+    .limit(1)
+    .executeTakeFirst()
+  return series !== undefined
+}
+
+function isTold(reading: ReadingRow, { series }: Recomputed): boolean {
+  return series.some((one) => one.batchId === reading.batchId)
+}
+
+async function refusePhotoOfOther(
+  trx: Trx,
+  { pullJarId }: ReadingRow,
+  { detail }: Correction,
+): Promise<void> {
+  if (pullJarId && detail.photoLines) await readOnPhotos(trx, pullJarId, [{ detail }], () => '')
 }

@@ -1,5 +1,6 @@
 import { sql } from 'kysely'
 import type { Db, Trx } from '@/lib/db/client'
+import { usedInstruments } from '@/lib/instrument/queries/used'
 import { doubtsOf } from './doubts'
 import type { ProtocolPlan } from '@/lib/protocol/schema'
 
@@ -60,8 +61,7 @@ export async function findReading(db: Db | Trx, id: string, instrumentId: string
         left join formula_version fv on fv.id = b.formula_version_id left join formula f on f.id = fv.formula_id
         where b.id = r.batch_id)`.as('emulsionType'),
       sql<string>`coalesce((select time_zone from lab limit 1), 'UTC')`.as('zone'),
-      sql<{ name: string; constant: number }[] | null>`(select spindles from instrument
-        where id = coalesce(${instrumentId}::uuid, r.instrument_id))`.as('spindles'),
+      usedInstruments(sql`i.id = coalesce(${instrumentId}::uuid, r.instrument_id)`).as('instruments'),
     ])
     .where('r.id', '=', id)
     .executeTakeFirst()

@@ -95,6 +95,7 @@ export type ReadingDetail = SeenLayers & {
   spindle?: string
   rpm?: number
   grossG?: number
+  creamMm?: number
   isEstimate?: boolean
 }
 
