@@ -1,3 +1,4 @@
+import { sql } from 'kysely'
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest'
 import { POST as log } from '@/app/api/pulls/[id]/readings/route'
 import { GET as history } from '@/app/api/readings/[id]/route'
@@ -264,4 +265,49 @@ it('lines on a photo of another jar are refused in a correction as at the first 
   const refused = await mend(kept.body.readings[0].id, { typed: 'none, on the photo', detail })
   expect(refused.status).toBe(422)
   expect(refused.body.error.fields).toEqual({ 'detail.photoLines': 'A photo of another jar.' })
+})
+
+it('what is void is asked for again on its day, and read anew; the rest of the jar stays as it was read', async () => {
+  const jar = await jarOf(25, 1)
+  const kept = await keep(jar, measured(study, jar))
+  const [ph, viscosity] = kept.body.readings
+  const lineOf = () =>
+    t.db
+      .selectFrom('pullJar as pj')
+      .innerJoin('jar', 'jar.id', 'pj.jarId')
+      .select(['pj.state', 'jar.state as jarState', 'pj.version'])
+      .where('pj.id', '=', jar.pullJarId)
+      .executeTakeFirstOrThrow()
+  expect((await take(ph.id)).status).toBe(200)
+  const open = await lineOf()
+  expect(open).toMatchObject({ state: 'due', jarState: 'stored' })
+  const anew = measured(study, { ...jar, version: open.version }, { ph: '5.47', torque: null })
+  const again = await keep(jar, anew)
+  expect(again.body).toMatchObject({ state: 'done', missing: [] })
+  expect(await lineOf()).toMatchObject({ state: 'done', jarState: 'spent' })
+  expect(await lastOf(viscosity.id)).toMatchObject({ isVoid: false, value: 6500 })
+
+  // On a later day there is nothing left to measure in it: it stays as it is, with the void and its reason.
+  await t.owner.transaction().execute(async (trx) => {
+    await sql`select set_config('app.actor_id', ${mada.actor.personId}, true)`.execute(trx)
+    await sql`update pull_jar set closed_at = closed_at - interval '3 days' where id = ${jar.pullJarId}`.execute(
+      trx,
+    )
+  })
+  expect((await take(viscosity.id, formulator)).status).toBe(200)
+  expect(await lineOf()).toMatchObject({ state: 'done', jarState: 'spent' })
+})
+
+it('D05: an entry that is sent again with another speed is told so, not taken for the same', async () => {
+  const jar = await jarOf(25, 1)
+  const body = measured(study, jar)
+  expect((await keep(jar, body)).status).toBe(200)
+  expect((await keep(jar, body)).status, 'the same under another key').toBe(200)
+  const [ph, viscosity] = body.readings
+  const changed = { ...viscosity!, detail: { torquePercent: 65, rpm: 10 } }
+  const refused = await keep(jar, { ...body, readings: [ph, changed] })
+  expect(refused.status).toBe(409)
+  expect(refused.body.error.sentence).toMatch(
+    /on record as "65", with another instrument or under other conditions/,
+  )
 })

@@ -26,6 +26,8 @@ export type KeptEntry = {
   replicate: number
   value: number | null
   typed: string
+  detail: Record<string, unknown>
+  instrumentId: string | null
   doubts: { reason: string; sentence: string }[]
   measuredAt: string
 }
@@ -100,7 +102,7 @@ export async function findPullJar(
       usedInstruments(sql`i.id = any(${instrumentIds}::uuid[])`).as('instruments'),
       sql<KeptEntry[]>`(select coalesce(jsonb_agg(jsonb_build_object('id', r.id, 'pullJarId', r.pull_jar_id,
           'recordedBy', r.recorded_by, 'attribute', r.attribute, 'replicate', r.replicate, 'value', r.value,
-          'typed', r.typed, 'doubts', r.doubts, 'measuredAt', r.measured_at) order by r.id), '[]')
+          'typed', r.typed, 'detail', r.detail, 'instrumentId', r.instrument_id, 'doubts', r.doubts, 'measuredAt', r.measured_at) order by r.id), '[]')
         from reading r where r.id = any(${entryIds}::uuid[]))`.as('keptEntries'),
       sql<boolean>`exists (select from jar_mishap m where m.pull_jar_id = pj.id and m.kind = 'pulled early')`.as(
         'isPulledEarly',

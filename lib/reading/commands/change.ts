@@ -3,6 +3,7 @@ import type { Trx } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
 import { readOnPhotos } from '@/lib/photo/queries/of-jar'
 import { pulledFor } from '@/lib/protocol/rules/plan'
+import { askAgain } from '@/lib/pull/commands/ask-again'
 import { takeUnwantedBack } from '@/lib/pull/commands/take-repeats-back'
 import { lockStudy, recomputeSeries, type Recomputed } from '@/lib/series/commands'
 import { inSentence } from '@/lib/study/rules/finding'
@@ -50,7 +51,7 @@ export async function correctReading(trx: Trx, actor: Actor, readingId: string, 
   return { id: input.id, supersedesId: readingId, ...recomputed }
 }
 
-/** The reading stays on record and counts no more. */
+/** The reading stays on record and counts no more; on the day it was read the jar asks for it again. */
 export async function voidReading(trx: Trx, actor: Actor, readingId: string, input: Voiding) {
   const reading = await claimReading(trx, actor, readingId, input.id, null)
   if (reading.newerId === input.id) return { id: input.id, supersedesId: readingId, ...nothingNew }
@@ -67,6 +68,7 @@ export async function voidReading(trx: Trx, actor: Actor, readingId: string, inp
       `This is the only initial of ${inSentence(reading.attribute)}, and all that is said of it since rests on it. Correct it instead.`,
     )
   }
+  if (reading.pullJarId) await askAgain(trx, reading.pullJarId, reading.attribute)
   return { id: input.id, supersedesId: readingId, ...recomputed }
 }
 

@@ -84,7 +84,7 @@ async function getFrameStudy(db: Db | Trx, studyId: string) {
           'studyStationId', j.study_station_id, 'shelf', j.shelf, 'place', j.place,
           'missedIn', (select coalesce(jsonb_agg(pj.pull_id), '[]') from pull_jar pj where pj.jar_id = j.id))
           order by j.shelf, j.place, j.code), '[]')
-        from jar j where j.study_id = s.id and j.kind = 'spare' and j.state = 'stored'
+        from jar j where j.study_id = s.id and s.state <> 'closed' and j.kind = 'spare' and j.state = 'stored'
           and not exists (select 1 from pull_jar pj where pj.jar_id = j.id and pj.state <> 'missed')) as spares
     from study s where s.id = ${studyId}
   `.execute(db)
