@@ -20,6 +20,7 @@ export default function Camera({ ghost, onTake, onClose }: Props) {
   const [state, setState] = useState<State>({ kind: 'starting' })
   const [strength, setStrength] = useState(35)
   const [taken, setTaken] = useState(0)
+  const [shape, setShape] = useState({ width: 4, height: 3 })
 
   useEffect(() => {
     let isOver = false
@@ -114,24 +115,36 @@ export default function Camera({ ghost, onTake, onClose }: Props) {
         </>
       }
     >
-      <div className="relative min-h-0 flex-1 overflow-hidden border-2 border-ink bg-ink">
-        <video
-          ref={video}
-          muted
-          playsInline
-          aria-label="What the camera sees"
-          className="absolute inset-0 h-full w-full object-contain"
-        />
-        {ghost ? (
-          // eslint-disable-next-line @next/next/no-img-element -- served through a permission check
-          <img
-            src={ghost}
-            alt="The last photo of this jar"
-            className="pointer-events-none absolute inset-0 h-full w-full object-contain"
-            style={{ opacity: strength / 100 }}
+      <div className="grid min-h-0 flex-1 place-items-center [container-type:size]">
+        {/* As the camera's picture is, so that the frame lies on the same place of each photo. */}
+        <div
+          className="relative overflow-hidden bg-ink outline outline-2 outline-ink"
+          style={{
+            width: `calc(min(100cqw, 100cqh * ${shape.width} / ${shape.height}) - 4px)`,
+            aspectRatio: `${shape.width} / ${shape.height}`,
+          }}
+        >
+          <video
+            ref={video}
+            muted
+            playsInline
+            aria-label="What the camera sees"
+            onLoadedMetadata={({ currentTarget: { videoWidth: width, videoHeight: height } }) =>
+              setShape({ width, height })
+            }
+            className="absolute inset-0 h-full w-full object-contain"
           />
-        ) : null}
-        <Frame />
+          {ghost ? (
+            // eslint-disable-next-line @next/next/no-img-element -- served through a permission check
+            <img
+              src={ghost}
+              alt="The last photo of this jar"
+              className="pointer-events-none absolute inset-0 h-full w-full object-contain"
+              style={{ opacity: strength / 100 }}
+            />
+          ) : null}
+          <Frame />
+        </div>
       </div>
       <p role="status" className="text-17">
         {state.kind === 'starting'

@@ -176,7 +176,10 @@ function Measuring({ photoId, copy, frame, onUse }: MeasuringProps) {
         means ? (
           <p>
             <span className="block text-17">
-              D[3,2] of {diameters.length} drops, D[4,3] {means.d43.toFixed(2)}, span {means.span.toFixed(2)}
+              D[3,2] of {diameters.length} drops
+              <span className="max-sm:hidden">
+                , D[4,3] {means.d43.toFixed(2)}, span {means.span.toFixed(2)}
+              </span>
             </span>
             <b className="text-30 font-650 leading-none">{means.d32.toFixed(2)}</b> micrometres
           </p>

@@ -86,7 +86,11 @@ export default function Measure({ jar, photo, onUse, onClose }: Props) {
       tools={
         <>
           <SureWords proposing={proposing} isMoved={byHand !== null} isSent={photo.isSent} />
-          <div role="group" aria-label="Lines" className="grid gap-3">
+          <div
+            role="group"
+            aria-label="Lines"
+            className="grid gap-3 max-sm:grid-cols-2 [@media(max-height:500px)]:grid-cols-2"
+          >
             {lineOrder.map((line) => (
               <div
                 key={line}
@@ -123,7 +127,9 @@ export default function Measure({ jar, photo, onUse, onClose }: Props) {
       }
       told={
         <div className="flex items-center gap-4">
-          <JarGlyph height={64} state="drawn" topPercent={topPercent} bottomPercent={bottomPercent} />
+          <div className="max-sm:hidden">
+            <JarGlyph height={64} state="drawn" topPercent={topPercent} bottomPercent={bottomPercent} />
+          </div>
           <p>
             <span className="block text-17">Separation</span>
             <b className="text-36 leading-none">{percent.toFixed(1)}</b> <span className="text-24">%</span>

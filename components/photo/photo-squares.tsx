@@ -1,4 +1,5 @@
 import type { Square } from '@/lib/science/patch'
+import { PictureLabel } from './picture-label'
 
 type Props = {
   src: string
@@ -10,7 +11,6 @@ type Props = {
 
 /** A photo under the patches that a colour is told from, each named. */
 export function PhotoSquares({ src, alt, width, height, squares }: Props) {
-  const text = Math.max(width, height) / 36
   return (
     <>
       {/* eslint-disable-next-line @next/next/no-img-element -- in memory, or served through a permission check */}
@@ -31,21 +31,26 @@ export function PhotoSquares({ src, alt, width, height, squares }: Props) {
                 vectorEffect="non-scaling-stroke"
               />
             ))}
-            <text
-              x={x}
-              y={y - side / 2 - text * 0.5 < text ? y + side / 2 + text * 1.2 : y - side / 2 - text * 0.5}
-              fontSize={text}
-              fontWeight={isPicked ? 700 : 430}
-              textAnchor="middle"
-              stroke="#FFFFFF"
-              strokeWidth={text / 4}
-              paintOrder="stroke"
-              style={{ fill: '#0E1D17' }}
-            >
-              {name}
-            </text>
           </g>
         ))}
+      </svg>
+      <svg className="absolute inset-0 h-full w-full" aria-hidden>
+        {squares.map(({ name, square: { x, y, side }, isPicked }) => {
+          // At the picture's upper edge there is no room over it.
+          const isUnder = y - side / 2 < height / 8
+          return (
+            <PictureLabel
+              key={name}
+              {...{ x, width, height }}
+              y={isUnder ? y + side / 2 : y - side / 2}
+              dy={isUnder ? '1.2em' : '-0.5em'}
+              anchor="middle"
+              isBold={isPicked === true}
+            >
+              {name}
+            </PictureLabel>
+          )
+        })}
       </svg>
     </>
   )

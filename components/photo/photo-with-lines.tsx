@@ -1,5 +1,6 @@
 import type { PhotoLines } from '@/lib/science/photo-lines'
 import { lineNames, lineOrder, type Line } from './lines'
+import { PictureLabel } from './picture-label'
 
 type Props = {
   src: string
@@ -29,7 +30,6 @@ export function PhotoWithLines({
 }: Props) {
   const slope = Math.tan((tiltDegrees * Math.PI) / 180)
   const at = (line: Line, x: number) => lines[line] - (x - axisX) * slope
-  const text = height / 36
   return (
     <>
       {/* eslint-disable-next-line @next/next/no-img-element -- in memory, or served through a permission check */}
@@ -49,26 +49,26 @@ export function PhotoWithLines({
                 vectorEffect="non-scaling-stroke"
               />
             ))}
-            {isUnnamed ? null : (
-              <text
-                x={width - text * 0.4}
-                y={
-                  at(line, width) + (line === 'fillTop' || line === 'bottomEdge' ? -0.4 * text : 1.05 * text)
-                }
-                fontSize={text}
-                fontWeight={line === picked ? 700 : 400}
-                textAnchor="end"
-                stroke="#FFFFFF"
-                strokeWidth={text / 4}
-                paintOrder="stroke"
-                style={{ fill: '#0E1D17' }}
-              >
-                {lineNames[line]}
-              </text>
-            )}
           </g>
         ))}
       </svg>
+      {isUnnamed ? null : (
+        <svg className="absolute inset-0 h-full w-full" aria-hidden>
+          {lineOrder.map((line) => (
+            <PictureLabel
+              key={line}
+              {...{ width, height }}
+              x={width}
+              y={at(line, width)}
+              dy={line === 'fillTop' || line === 'bottomEdge' ? '-0.4em' : '1.05em'}
+              anchor="end"
+              isBold={line === picked}
+            >
+              {lineNames[line]}
+            </PictureLabel>
+          ))}
+        </svg>
+      )}
     </>
   )
 }
