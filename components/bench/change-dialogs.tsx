@@ -4,6 +4,7 @@ import { useState } from 'react'
 import { ChoiceChips } from '@/components/bench/choice-chips'
 import type { JarReading } from '@/components/bench/done-panel'
 import { emptyDraft, entriesOf, slotsOf } from '@/components/bench/draft'
+import { QuickReason } from '@/components/bench/quick-reason'
 import { slotLabel, slotUnit, verdictOf } from '@/components/bench/verdict'
 import { Button } from '@/components/ui/button'
 import { Dialog } from '@/components/ui/dialog'
@@ -16,24 +17,6 @@ import { readingKeys } from '@/lib/reading/keys'
 import { conditionKeys } from '@/lib/reading/rules/conditions'
 
 const quickReasons = ['misread', 'typed wrong', 'another jar', 'instrument was not ready'] as const
-
-type ReasonProps = { reason: string; onReason: (reason: string) => void; error: string | undefined }
-
-/** What it mostly is, with one press, or in own words. */
-function Reason({ reason, onReason, error }: ReasonProps) {
-  return (
-    <>
-      <ChoiceChips
-        label="Why"
-        columns="grid-cols-2 sm:grid-cols-2"
-        choices={quickReasons.map((one) => ({ value: one, label: one }))}
-        picked={reason}
-        onPick={onReason}
-      />
-      <Field label="Reason" density="bench" value={reason} onText={onReason} error={error} />
-    </>
-  )
-}
 
 type Props = { jar: BenchJarPage; reading: JarReading; onClose: () => void; onDone: () => void }
 
@@ -112,7 +95,7 @@ export function CorrectDialog({ jar, reading, onClose, onDone }: Props) {
           />
         ),
       )}
-      <Reason reason={reason} onReason={setReason} error={act.fieldError} />
+      <QuickReason choices={quickReasons} reason={reason} onReason={setReason} error={act.fieldError} />
       <ErrorNote error={act.error} />
     </Dialog>
   )
@@ -152,7 +135,7 @@ export function VoidDialog({ id, name, onClose, onDone }: VoidProps) {
         </>
       }
     >
-      <Reason reason={reason} onReason={setReason} error={act.fieldError} />
+      <QuickReason choices={quickReasons} reason={reason} onReason={setReason} error={act.fieldError} />
       <ErrorNote error={act.error} />
     </Dialog>
   )

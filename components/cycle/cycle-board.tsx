@@ -6,16 +6,19 @@ import { Empty } from '@/components/ui/empty'
 import { Heading } from '@/components/ui/heading'
 import type { CycleBoard as Board } from '@/lib/cycle/queries/board'
 import { cycleKeys } from '@/lib/cycle/keys'
+import type { Person } from '@/lib/cycle/rules/changing'
 import { Section } from '@/components/ui/section'
 import { fetcher } from '@/lib/http/fetcher'
 import { capital, numberWord } from '@/lib/study/rules/words'
 import { stateOf } from './cycle-words'
+import type { HalfListProps } from './half-list'
+import { Halves } from './halves'
 import { PlaceRow } from './place-row'
 import { usePress } from './use-press'
 import { useServerClock } from './use-server-clock'
 
 /** Jars in cycle, by study and freezer; its clock is the server's and goes on between two answers. */
-export function CycleBoard({ mayLog }: { mayLog: boolean }) {
+export function CycleBoard({ person }: { person: Person | null }) {
   const { data: board, mutate } = useSWR<Board>(cycleKeys.board, fetcher, { refreshInterval: 30_000 })
   const presses = usePress(() => void mutate())
   const now = useServerClock(board?.now)
@@ -52,19 +55,21 @@ export function CycleBoard({ mayLog }: { mayLog: boolean }) {
                 place={place}
                 now={now}
                 zone={board.zone}
-                mayLog={mayLog}
+                person={person}
                 presses={presses}
               />
             ))}
         </ul>
       )}
-      {over.length > 0 ? <Over places={over.map(({ place }) => place)} /> : null}
+      {over.length > 0 ? (
+        <Over places={over.map(({ place }) => place)} {...{ now, zone: board.zone, person, presses }} />
+      ) : null}
     </div>
   )
 }
 
 /** What is through its cycles: one line each, with what is still to be looked at. */
-function Over({ places }: { places: Board['places'] }) {
+function Over({ places, ...rest }: { places: Board['places'] } & Omit<HalfListProps, 'place'>) {
   return (
     <Section title="Through their cycles" className="pb-6">
       <ul className="text-17">
@@ -82,6 +87,7 @@ function Over({ places }: { places: Board['places'] }) {
             <span className="text-soft">
               all {place.cycles} cycles at the {place.stationName}
             </span>
+            <Halves place={place} {...rest} />
           </li>
         ))}
       </ul>

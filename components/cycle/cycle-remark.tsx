@@ -5,7 +5,8 @@ import useSWR from 'swr'
 import type { CycleBoard } from '@/lib/cycle/queries/board'
 import { cycleKeys } from '@/lib/cycle/keys'
 import { fetcher } from '@/lib/http/fetcher'
-import { stateOf, whenText } from './cycle-words'
+import { whenText } from '@/lib/cycle/rules/half-words'
+import { stateOf } from './cycle-words'
 import { useServerClock } from './use-server-clock'
 
 /** What stands at this station of the walk now, and how many halves are overdue. */

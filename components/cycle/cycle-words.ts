@@ -1,22 +1,9 @@
 import type { CyclePlace } from '@/lib/cycle/queries/board'
 import { cycleState, type CycleState, type Running } from '@/lib/cycle/rules/state'
-import { dayIn, spokenDay } from '@/lib/study/rules/calendar'
+import { hoursText, whenText } from '@/lib/cycle/rules/half-words'
 
 export function stateOf(place: CyclePlace, now: string): CycleState {
   return cycleState({ ...place, asked: place.asked ?? undefined }, now)
-}
-
-export function hoursText(hours: number): string {
-  return hours < 1 ? `${Math.max(0, Math.round(hours * 60))} min` : `${hours.toFixed(1)} h`
-}
-
-/** "16:00", and the day where it is another than today. */
-export function whenText(instant: string, now: string, zone: string): string {
-  const time = new Intl.DateTimeFormat('en-GB', { timeZone: zone, timeStyle: 'short' }).format(
-    new Date(instant),
-  )
-  const day = dayIn(zone, instant)
-  return day === dayIn(zone, now) ? time : `${spokenDay(day)}, ${time}`
 }
 
 /** What runs, in a sentence; hours elapsed and left against those the protocol prescribes. */

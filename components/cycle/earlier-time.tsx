@@ -56,6 +56,7 @@ export function instantOfTyped(typed: string, zone: string): string | null {
   return new Date(new TZDate(year, month - 1, day, hour, minute, zone).getTime()).toISOString()
 }
 
-function typedIn(instant: string, zone: string): string {
+/** As a field of date and time has it. */
+export function typedIn(instant: string, zone: string): string {
   return new TZDate(instant, zone).toISOString().slice(0, 16)
 }

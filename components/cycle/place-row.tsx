@@ -8,8 +8,12 @@ import { StationLabel } from '@/components/ui/station-label'
 import type { CyclePlace } from '@/lib/cycle/queries/board'
 import { capital, counted } from '@/lib/study/rules/words'
 import { CycleWave } from './cycle-wave'
-import { runningText, stateOf, whenText } from './cycle-words'
+import type { Person } from '@/lib/cycle/rules/changing'
+import { whenText } from '@/lib/cycle/rules/half-words'
+import { runningText, stateOf } from './cycle-words'
 import { EndDialog } from './end-dialog'
+import { Halves } from './halves'
+import { PaperDialog } from './paper-dialog'
 import { PressDialog } from './press-dialog'
 import type { usePress } from './use-press'
 
@@ -17,13 +21,14 @@ type Props = {
   place: CyclePlace
   now: string
   zone: string
-  mayLog: boolean
+  /** Null for whoever only reads. */
+  person: Person | null
   presses: ReturnType<typeof usePress>
 }
-type Asked = 'begin' | 'hold' | 'go on' | 'end' | null
+type Asked = 'paper' | 'begin' | 'hold' | 'go on' | 'end' | null
 
 /** One study at its freezer, on a dashed line: how far the cycles are, what runs, and the one next press. */
-export function PlaceRow({ place, now, zone, mayLog, presses }: Props) {
+export function PlaceRow({ place, now, zone, person, presses }: Props) {
   const [asked, setAsked] = useState<Asked>(null)
   const [error, setError] = useState<unknown>(null)
   const [isBusy, setBusy] = useState(false)
@@ -88,14 +93,17 @@ export function PlaceRow({ place, now, zone, mayLog, presses }: Props) {
           )}
           {kept.length > 0 ? (
             <span className="block font-650">
-              {capital(counted(kept.length, 'press', 'presses'))} kept on this device, not sent yet.
+              {capital(counted(kept.length, 'entry', 'entries'))} kept on this device, not sent yet.
             </span>
           ) : null}
         </p>
-        {mayLog && half ? (
+        {person && half ? (
           <div className="flex flex-wrap gap-3">
             {state.kind === 'waiting' ? (
               <>
+                <Button density="bench" onClick={() => setAsked('paper')}>
+                  From paper
+                </Button>
                 <Button density="bench" onClick={() => setAsked('begin')}>
                   Begun earlier
                 </Button>
@@ -119,6 +127,7 @@ export function PlaceRow({ place, now, zone, mayLog, presses }: Props) {
       </div>
       <ErrorNote error={error} />
       <Inspections place={place} />
+      <Halves {...{ place, now, zone, person, presses }} />
       {asked === 'end' && state.kind === 'running' ? (
         <EndDialog
           place={place}
@@ -129,7 +138,10 @@ export function PlaceRow({ place, now, zone, mayLog, presses }: Props) {
           onEnd={(ending) => presses.press(place, state, 'end', ending)}
         />
       ) : null}
-      {asked !== null && asked !== 'end' && half ? (
+      {asked === 'paper' && half ? (
+        <PaperDialog {...{ place, half, now, zone, presses }} onClose={close} />
+      ) : null}
+      {asked !== null && asked !== 'end' && asked !== 'paper' && half ? (
         <PressDialog
           title={
             asked === 'begin'

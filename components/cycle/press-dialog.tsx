@@ -4,8 +4,8 @@ import { useState } from 'react'
 import { Button } from '@/components/ui/button'
 import { Dialog } from '@/components/ui/dialog'
 import { ErrorNote } from '@/components/ui/error-note'
-import { Field } from '@/components/ui/field'
 import { EarlierTime, instantOfTyped } from './earlier-time'
+import { HoldReason } from './hold-reason'
 
 export type Pressing = { claimedAt?: string; reason: string }
 type Props = {
@@ -18,8 +18,6 @@ type Props = {
   onPress: (pressing: Pressing) => Promise<void>
   onClose: () => void
 }
-
-const reasons = ['weekend', 'holiday', 'freezer out of use']
 
 /** A press that says more than that it is pressed: an earlier time, or why a half is held. */
 export function PressDialog({ title, act, asksReason, now, zone, onPress, onClose }: Props) {
@@ -62,18 +60,7 @@ export function PressDialog({ title, act, asksReason, now, zone, onPress, onClos
         </>
       }
     >
-      {asksReason ? (
-        <>
-          <div className="flex flex-wrap gap-3">
-            {reasons.map((one) => (
-              <Button key={one} density="bench" onClick={() => setReason(one)}>
-                {one}
-              </Button>
-            ))}
-          </div>
-          <Field label="Why it is held" density="bench" value={reason} onText={setReason} />
-        </>
-      ) : null}
+      {asksReason ? <HoldReason label="Why it is held" reason={reason} onReason={setReason} /> : null}
       <EarlierTime label="At an earlier time" value={earlier} now={now} zone={zone} onSet={setEarlier} />
       <ErrorNote error={error} />
     </Dialog>

@@ -16,11 +16,13 @@ export function theirsOf({ detail }: Refusal): { by: string; lines: string[] } |
     by?: string | { name: string }
     readings?: Read[]
     missedReason?: string
+    lines?: string[]
     openedBy?: { name: string } | null
   }
   const by = typeof on.by === 'string' ? on.by : (on.by?.name ?? on.openedBy?.name)
   if (!by) return null
   if (on.readings) return { by, lines: on.readings.map(lineOf) }
+  if (on.lines) return { by, lines: on.lines }
   if (on.missedReason) return { by, lines: [`not read: ${on.missedReason}`] }
   return { by, lines: [on.openedBy ? 'has it open or took it out' : 'has read it'] }
 }

@@ -12,6 +12,7 @@ import { sendMail } from '@/lib/mail/send'
 import { dayIn, spokenDay } from '@/lib/study/rules/calendar'
 import { overdueMail } from './mail'
 import { cycleBoard, findCyclePlace } from './queries/board'
+import { isCurrentPress } from './queries/current'
 import { cycleState, type Running } from './rules/state'
 
 const told = z.object({ alarmId: z.uuid(), personId: z.uuid() })
@@ -46,7 +47,9 @@ async function raiseAlarms(trx: Trx, actor: Actor): Promise<void> {
       .where('cycle', '=', state.cycle)
       .where('half', '=', state.half)
       .where('press', '=', 'begin')
+      .where(isCurrentPress('cyclePress'))
       .executeTakeFirstOrThrow()
+    if (await wasTold(trx, place.id, state)) continue
     const noted = await trx
       .insertInto('cycleAlarm')
       .values({ id: newId(), beginPressId: begun.id, dueAt: state.dueAt!, recordedBy: actor.personId })
@@ -57,6 +60,18 @@ async function raiseAlarms(trx: Trx, actor: Actor): Promise<void> {
     for (const personId of await whoEndsHalves(trx, begun.recordedBy))
       await enqueue(trx, 'cycle.mail', { alarmId: noted.id, personId })
   }
+}
+
+/** Also where its begin was corrected since; one that was taken back and begun anew is another half. */
+async function wasTold(trx: Trx, studyStationId: string, { cycle, half }: Running): Promise<boolean> {
+  const { rows } = await sql`
+    select from cycle_alarm alarm join cycle_press begun on begun.id = alarm.begin_press_id
+    where begun.study_station_id = ${studyStationId} and begun.cycle = ${cycle} and begun.half = ${half}
+      and not exists (select from cycle_press gone where gone.study_station_id = begun.study_station_id
+        and gone.cycle = begun.cycle and gone.half = begun.half and gone.is_void
+        and gone.recorded_at > alarm.recorded_at)
+  `.execute(trx)
+  return rows.length > 0
 }
 
 /** Whoever began it, and the technicians: any of them may stand at the freezer when it is over. */

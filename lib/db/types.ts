@@ -186,14 +186,17 @@ export interface CycleAlarm {
 export interface CyclePress {
   at: string
   claimedAt: string | null
+  correctionReason: string | null
   cycle: number
   half: string
   id: string
+  isVoid: Generated<boolean>
   press: string
   reason: Generated<string>
   recordedAt: Generated<string>
   recordedBy: string
   studyStationId: string
+  supersedesId: string | null
 }
 
 export interface CycleStep {
@@ -205,6 +208,7 @@ export interface CycleStep {
   endedAt: string
   half: string
   heldHours: Generated<Numeric>
+  heldReason: Generated<string>
   id: string
   isFrozenThrough: boolean | null
   isVoid: Generated<boolean>

@@ -7,6 +7,7 @@ import { GET as boardRoute } from '@/app/api/cycles/board/route'
 import { POST as pressRoute } from '@/app/api/cycles/presses/route'
 import { POST as stepRoute } from '@/app/api/cycles/route'
 import { POST as readRoute } from '@/app/api/pulls/[id]/readings/route'
+import { POST as correctBeginRoute } from '@/app/api/cycles/presses/[id]/correct/route'
 import { POST as correctRoute } from '@/app/api/cycles/[id]/correct/route'
 import { systemActor } from '@/lib/auth/actor'
 import { jobs } from '@/lib/cycle/jobs'
@@ -219,6 +220,10 @@ describe('what is told later', () => {
     return rows[0]!.doubts.filter((doubt) => doubt.reason === 'cycle')
   }
   const week = 7 * 24
+  const fix = (stepId: string, body: object, who = mada) =>
+    call(correctRoute, { cookie: who.cookie, params: { id: stepId }, body })
+  const fixBegin = (pressId: string, body: object, who = mada) =>
+    call(correctBeginRoute, { cookie: who.cookie, params: { id: pressId }, body })
 
   it('a short half typed after the jar was read doubts it, and correcting or taking it back frees it again', async () => {
     const id = await readAt(jarAt(await askedJars(t.db, study.studyId), 5, 1, 'watch'))
@@ -226,23 +231,182 @@ describe('what is told later', () => {
     // The jar was read in week 1, three weeks ago; the half ended before that after 4 of 16 hours.
     const short = { id: newId(), studyStationId: placeId, cycle: 1, half: 'cold', ...whole }
     const times = { begunAt: hoursAgo(3.5 * week), endedAt: hoursAgo(3.5 * week - 4) }
-    expect((await call(stepRoute, { cookie: mada.cookie, body: { ...short, ...times } })).status).toBe(200)
+    const type = (body: object) => call(stepRoute, { cookie: mada.cookie, body })
+    const asked = await type({ ...short, ...times })
+    expect(asked.body.error).toMatchObject({
+      ...{ code: 'confirm', detail: { doubted: 1, freed: 0, shortfalls: ['It lasted 4.0 of 16 h.'] } },
+      sentence: expect.stringContaining('One reading taken after it carries a doubt then'),
+    })
+    expect((await place()).steps).toEqual([])
+    const told = await type({ ...short, ...times, isConfirmed: true })
+    expect(told.body).toMatchObject({ doubted: 1, freed: 0 })
     expect((await doubtsOn(id))[0]!.sentence).toMatch(/^Cycle 1 fell short/)
-    const instead = { ...whole, id: newId(), ...times, endedAt: hoursAgo(3.5 * week - 16) }
-    const fix = (stepId: string, body: object, who = mada) =>
-      call(correctRoute, { cookie: who.cookie, params: { id: stepId }, body })
-    expect((await fix(short.id, { ...instead, reason: ' ' })).status).toBe(422)
-    expect((await fix(short.id, { ...instead, reason: 'mine' }, jos)).status).toBe(403)
-    const again = { ...instead, reason: 'misread the sheet' }
-    expect((await fix(short.id, again)).status).toBe(200)
-    expect((await fix(short.id, again)).status).toBe(200)
+
+    const instead = { ...whole, id: newId(), change: 'correct', version: 1, ...times }
+    const longer = { ...instead, endedAt: hoursAgo(3.5 * week - 16) }
+    expect((await fix(short.id, { ...longer, reason: ' ' })).status).toBe(422)
+    expect((await fix(short.id, { ...longer, reason: 'mine' }, jos)).status).toBe(403)
+    expect((await fix(short.id, { ...longer, reason: 'mine' }, qa)).status).toBe(403)
+    const again = { ...longer, reason: 'misread the sheet', isConfirmed: true }
+    const frees = await fix(short.id, { ...again, isConfirmed: false })
+    expect(frees.body.error).toMatchObject({
+      ...{ code: 'confirm', detail: { doubted: 0, freed: 1 } },
+      sentence: 'One reading taken after it carries no doubt because of it any longer. Is it so?',
+    })
+    expect(await doubtsOn(id)).toHaveLength(1)
+    const five = await Promise.all(Array.from({ length: 5 }, () => fix(short.id, again)))
+    expect(five.map((one) => one.status)).toEqual([200, 200, 200, 200, 200])
     expect(await doubtsOn(id)).toEqual([])
     const trail = await t.db.selectFrom('trail').select('reason').where('rowId', '=', again.id).execute()
     expect(trail).toMatchObject([{ reason: 'misread the sheet' }])
-    expect((await place()).steps).toMatchObject([{ id: again.id }])
-    const gone = { ...again, id: newId(), isVoid: true, reason: 'another study' }
+    expect(await place()).toMatchObject({
+      steps: [{ id: again.id, by: 'Mada Orr', correctionReason: 'misread the sheet' }],
+      past: [{ id: short.id, correctionReason: null }],
+    })
+    const gone = { id: newId(), change: 'take back', version: 2, reason: 'another study' }
     expect((await fix(again.id, gone)).status).toBe(200)
     expect((await place()).steps).toEqual([])
+    // Typed once more, and short: the reading is doubted anew.
+    expect((await type({ ...short, ...times, id: newId(), isConfirmed: true })).body.doubted).toBe(1)
+  })
+
+  it('of two who change the same half one is told what stands there now, and a formulator changes what is anyone’s', async () => {
+    const first = { id: newId(), studyStationId: placeId, cycle: 1, half: 'cold', ...whole }
+    const times = { begunAt: hoursAgo(40), endedAt: hoursAgo(24) }
+    await call(stepRoute, { cookie: mada.cookie, body: { ...first, ...times } })
+    const change = (more: object) => ({
+      ...{ id: newId(), change: 'correct', version: 1, ...whole, ...times, reason: 'misread', ...more },
+    })
+    const answers = await Promise.all([
+      fix(first.id, change({ reachedC: -11 })),
+      fix(first.id, change({ reachedC: -12 }), formulator),
+    ])
+    expect(answers.map((one) => one.status).toSorted()).toEqual([200, 412])
+    const { detail } = answers.find((one) => one.status === 412)!.body.error
+    expect(detail).toMatchObject({
+      version: 2,
+      lines: [expect.any(String), expect.stringMatching(/reached −1[12] °C/)],
+    })
+    // At the version that stands, a formulator's counts.
+    const now = await fix(
+      first.id,
+      change({ version: 2, reachedC: -12.5, heldHours: 2, heldReason: 'weekend' }),
+      formulator,
+    )
+    expect(now.status).toBe(200)
+    const { steps, past } = await place()
+    expect(steps).toMatchObject([
+      { reachedC: -12.5, heldHours: 2, heldReason: 'weekend', by: formulator.actor.name },
+    ])
+    expect(past).toHaveLength(2)
+    // It is the formulator's entry now, so a technician leaves it.
+    expect((await fix(first.id, change({ version: 3 }), jos)).status).toBe(403)
+  })
+
+  it.each([
+    ['an end before its begin', { endedAt: hoursAgo(60) }, 'endedAt'],
+    ['an end that lies ahead', { endedAt: hoursAgo(-2) }, 'endedAt'],
+    ['a begin before the cold half ended', { begunAt: hoursAgo(30) }, 'begunAt'],
+    ['a hold longer than the half', { heldHours: 50, heldReason: 'weekend' }, 'heldHours'],
+    ['a hold without a reason', { heldHours: 2 }, 'heldReason'],
+    ['a temperature that is none', { reachedC: 'warm' }, 'reachedC'],
+    ['no version', { version: undefined }, 'version'],
+    ['a time of no calendar', { begunAt: '2026-02-31T08:00' }, 'begunAt'],
+  ])('a correction with %s is refused in a sentence at its field', async (_name, more, field) => {
+    const typed = { studyStationId: placeId, cycle: 1, ...whole }
+    const cold = { ...typed, id: newId(), half: 'cold', begunAt: hoursAgo(42), endedAt: hoursAgo(26) }
+    const warm = {
+      ...typed,
+      id: newId(),
+      half: 'warm',
+      reachedC: 25,
+      begunAt: hoursAgo(25),
+      endedAt: hoursAgo(17),
+    }
+    for (const body of [cold, warm]) await call(stepRoute, { cookie: mada.cookie, body })
+    const { begunAt, endedAt, reachedC } = warm
+    const change = {
+      id: newId(),
+      change: 'correct',
+      version: 1,
+      reason: 'misread',
+      begunAt,
+      endedAt,
+      reachedC,
+    }
+    const answer = await fix(warm.id, { ...change, ...more })
+    expect([answer.status, Object.keys(answer.body.error.fields)]).toEqual([422, [field]])
+    // Another half's id is no way to write over it.
+    expect((await fix(warm.id, { ...change, id: cold.id })).status).toBe(409)
+  })
+
+  it('a begin is corrected, taken back and begun anew, by its author on the day or a formulator', async () => {
+    const device = { deviceNow: new Date().toISOString() }
+    const begin = press('begin', { claimedAt: hoursAgo(20), ...device })
+    await send(begin)
+    const change = (more: object) => ({
+      id: newId(),
+      change: 'correct',
+      version: 1,
+      reason: 'pressed too late',
+      ...more,
+    })
+    expect((await fixBegin(begin.id, change({ begunAt: hoursAgo(30) }), jos)).status).toBe(403)
+    expect((await fixBegin(begin.id, change({ begunAt: hoursAgo(-1) }))).status).toBe(422)
+    expect((await fixBegin(newId(), change({ begunAt: hoursAgo(30) }))).status).toBe(404)
+    const begunAt = hoursAgo(30)
+    const earlier = change({ begunAt })
+    const five = await Promise.all(Array.from({ length: 5 }, () => fixBegin(begin.id, earlier)))
+    expect(five.map((one) => one.status)).toEqual([200, 200, 200, 200, 200])
+    expect(await place()).toMatchObject({
+      presses: [{ id: earlier.id, at: expect.stringMatching(new RegExp(`^${begunAt.slice(0, 19)}`)) }],
+      pastBegins: [{ id: begin.id }],
+    })
+    const held = press('hold', { reason: 'weekend', claimedAt: hoursAgo(10), ...device })
+    expect((await send(held)).status).toBe(200)
+    expect(
+      (await fixBegin(earlier.id, change({ version: 2, begunAt: hoursAgo(9) }))).body.error.fields.begunAt,
+    ).toBe('By then Mada Orr held the cold half of cycle 1. Correct the time.')
+    const gone = change({ change: 'take back', version: 2 })
+    expect((await fixBegin(earlier.id, gone, formulator)).status).toBe(200)
+    expect((await place()).presses).toEqual([])
+    expect((await fixBegin(earlier.id, change({ version: 3, begunAt: hoursAgo(9) }))).status).toBe(412)
+    // Begun anew its hold before is none of it, and it ends as a whole half.
+    expect((await send(press('begin', { claimedAt: hoursAgo(17), ...device }))).status).toBe(200)
+    expect((await send(press('begin'), jos)).status).toBe(409)
+    expect((await send(press('end', whole))).body.shortfalls).toEqual([])
+    expect((await place()).steps).toMatchObject([{ heldHours: 0 }])
+  })
+
+  it('an end pressed too early runs on where nothing came after it; else the half is taken back with its begin', async () => {
+    const device = { deviceNow: new Date().toISOString() }
+    await send(press('begin', { claimedAt: hoursAgo(30), ...device }))
+    const end = press('end', { ...whole, claimedAt: hoursAgo(13), ...device })
+    await send(end)
+    const change = (what: string, version: number) => ({
+      id: newId(),
+      change: what,
+      version,
+      reason: 'pressed by mistake',
+    })
+    expect((await fix(end.id, change('run on', 1))).status).toBe(200)
+    expect(await place()).toMatchObject({ steps: [], presses: [{ press: 'begin' }] })
+    const again = press('end', { ...whole, claimedAt: hoursAgo(12), ...device })
+    await send(again)
+    await send(press('begin', { half: 'warm', claimedAt: hoursAgo(11), ...device }))
+    expect((await fix(again.id, change('run on', 3))).body.error.sentence).toContain('has begun since')
+    expect((await fix(again.id, change('take back', 3))).status).toBe(200)
+    const { steps, presses, past } = await place()
+    expect([steps, presses.map((one: { half: string }) => one.half), past.length]).toEqual([[], ['warm'], 4])
+    // The gap is typed from paper, although the warm half runs.
+    const paper = { id: newId(), studyStationId: placeId, cycle: 1, half: 'cold', ...whole }
+    const late = { ...paper, begunAt: hoursAgo(30), endedAt: hoursAgo(10) }
+    const overlaps = await call(stepRoute, { cookie: mada.cookie, body: late })
+    expect(overlaps.body.error.fields.endedAt).toBe(
+      'Before that the warm half of cycle 1 had begun. Correct the time.',
+    )
+    const fits = await call(stepRoute, { cookie: mada.cookie, body: { ...late, endedAt: hoursAgo(12) } })
+    expect(fits.status).toBe(200)
   })
 
   it('D03: an overdue half is mailed once to whoever began it and the technicians, and not once it is ended', async () => {
@@ -262,6 +426,18 @@ describe('what is told later', () => {
       expect(waiting.map(({ data }) => data.personId).toSorted()).toEqual(
         [mada.actor.personId, jos.actor.personId].toSorted(),
       )
+      // Told once for each half, also where its begin is corrected since.
+      const { id: begun } = (await place()).presses[0]
+      const change = { id: newId(), change: 'correct', version: 1, begunAt: hoursAgo(19), reason: 'misread' }
+      expect((await fixBegin(begun, change)).status).toBe(200)
+      await watch!.handle(context, {})
+      const alarms = await t.db
+        .selectFrom('cycleAlarm')
+        .innerJoin('cyclePress', 'cyclePress.id', 'cycleAlarm.beginPressId')
+        .select('cycleAlarm.id')
+        .where('cyclePress.studyStationId', '=', placeId)
+        .execute()
+      expect(alarms).toHaveLength(1)
       await mail!.handle(context, waiting[0]!.data)
       await mail!.handle(context, waiting[0]!.data)
       const told = async () => {

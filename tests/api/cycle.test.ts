@@ -41,17 +41,16 @@ beforeAll(async () => {
 })
 afterAll(() => t.close())
 
-const half = (more: Record<string, unknown> = {}) => ({
-  id: newId(),
-  studyStationId: frozenId,
-  cycle: 1,
-  half: 'cold',
-  begunAt: new Date(Date.now() - 86_400_000).toISOString(),
-  endedAt: new Date(Date.now() - 3_600_000).toISOString(),
-  reachedC: -10.5,
-  isFrozenThrough: true,
-  ...more,
-})
+const hoursAgo = (hours: number) => new Date(Date.now() - hours * 3_600_000).toISOString()
+// Three hours each, one after the other, so that no two overlap.
+const half = ({ cycle = 1, half: name = 'cold', ...more }: Record<string, unknown> = {}) => {
+  const begun = 40 - 8 * Number(cycle) - (name === 'warm' ? 4 : 0)
+  return {
+    ...{ id: newId(), studyStationId: frozenId, cycle, half: name },
+    ...{ begunAt: hoursAgo(begun), endedAt: hoursAgo(begun - 3), reachedC: -10.5, isFrozenThrough: true },
+    ...more,
+  }
+}
 const send = (body: object, cookie = technician.cookie) => call(log, { cookie, body })
 
 it('keeps each half once and lists them in order', async () => {
@@ -74,21 +73,34 @@ it('the same half of five people at once is kept once', async () => {
 })
 
 it.each([
-  ['an end before its beginning', { endedAt: new Date(Date.now() - 90_000_000).toISOString() }, 422],
-  ['an end that lies ahead', { endedAt: new Date(Date.now() + 3_600_000).toISOString() }, 422],
+  ['an end before its beginning', { endedAt: hoursAgo(35) }, 422],
+  ['an end that lies ahead', { endedAt: hoursAgo(-1) }, 422],
   ['cycle 0', { cycle: 0 }, 422],
+  ['a beginning before the half before it ended', { begunAt: hoursAgo(22) }, 422],
+  ['a half before its turn', { cycle: 3 }, 409],
+  ['a cycle that the study does not have', { cycle: 90 }, 409],
+  ['more hours held than it lasted', { heldHours: 4, heldReason: 'weekend' }, 422],
+  ['a hold without a reason', { heldHours: 1 }, 422],
+  ['a temperature that is none', { reachedC: 'cold' }, 422],
   ['a station that is not there', { studyStationId: newId() }, 404],
 ])('refuses %s', async (_name, more, status) => {
-  expect((await send(half({ cycle: 9, ...more }))).status).toBe(status)
+  expect((await send(half({ cycle: 2, half: 'warm', ...more }))).status).toBe(status)
 })
 
 it('refuses cycles at a station that has none, and QA', async () => {
-  expect((await send(half({ studyStationId: warmId }))).status).toBe(409)
+  expect((await send(half({ studyStationId: warmId }))).status).toBe(404)
   expect((await send(half(), qa.cookie)).status).toBe(403)
 })
 
 it('a cycle cut short is a doubt on the readings after it', async () => {
-  await send(half({ cycle: 3, isFrozenThrough: false }))
+  await send(half({ cycle: 2, half: 'warm', reachedC: 25 }))
+  const short = half({ cycle: 3, isFrozenThrough: false })
+  const asked = await send(short)
+  expect(asked.status).toBe(409)
+  expect(asked.body.error.sentence).toMatch(
+    /^The jars were not frozen through\. Readings taken after it carry a doubt then/,
+  )
+  expect((await send({ ...short, isConfirmed: true })).status).toBe(200)
   const readAt = async (week: number, more: object) => {
     const jar = jarAt(await askedJars(t.db, study.studyId), 5, week, 'watch')
     const body = { ...layered(study, jar, 0, 0), ...more }

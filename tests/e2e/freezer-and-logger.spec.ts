@@ -26,11 +26,11 @@ test('A half is held and ended at the board, and a logger’s file is taken', as
   await dialog.getByRole('button', { name: 'weekend' }).click()
   await dialog.getByRole('button', { name: 'Hold it' }).click()
   await expect(running).toContainText(/held since .*: weekend/)
-  await expect(running).toContainText('One press kept on this device, not sent yet.')
+  await expect(running).toContainText('One entry kept on this device, not sent yet.')
   await running.getByRole('button', { name: 'Go on' }).click()
   await dialog.getByRole('button', { name: 'Go on' }).click()
   await expect(running).not.toContainText('held since')
-  await expect(running).toContainText('Two presses kept on this device, not sent yet.')
+  await expect(running).toContainText('Two entries kept on this device, not sent yet.')
   await context.setOffline(false)
   await expect(running).not.toContainText('not sent yet', { timeout: 20_000 })
   const { places } = (await (await page.request.get('/api/cycles/board')).json()) as CycleBoard

@@ -1,8 +1,10 @@
 import { describe, expect, it } from 'vitest'
 import { withWaiting } from '@/components/cycle/waiting-presses'
 import type { CyclePlace } from '@/lib/cycle/queries/board'
+import { doubtsChanged } from '@/lib/cycle/rules/half-words'
 import { shortfalls } from '@/lib/cycle/rules/shortfall'
 import { cycleState, type CyclePress, type CycleRecord, type Running } from '@/lib/cycle/rules/state'
+import type { CyclePressInput } from '@/lib/cycle/schema'
 
 const friday = '2026-03-06T16:00:00Z'
 const after = (hours: number) => new Date(Date.parse(friday) + hours * 3_600_000).toISOString()
@@ -98,27 +100,96 @@ describe('in what a half fell short', () => {
   })
 })
 
-describe('presses that wait on the device', () => {
-  const place = { ...record({ presses: [press('begin', friday)] }), asked: null } as unknown as CyclePlace
+describe('what waits on the device', () => {
+  const place = {
+    ...record({ presses: [{ ...press('begin', friday), id: 'begun' } as CyclePress] }),
+    ...{ past: [], pastBegins: [], asked: null },
+  } as unknown as CyclePlace
   const half = { studyStationId: place.id, cycle: 1, half: 'cold' as const }
-  const state = (waiting: Parameters<typeof withWaiting>[1], now: string) =>
-    cycleState({ ...withWaiting(place, waiting, now), asked: undefined }, now)
+  const end = { ...half, id: 'a', press: 'end' as const, claimedAt: after(16) }
+  const change = { version: 1, reason: 'misread' }
+  const stands = (waiting: Parameters<typeof withWaiting>[1], now: string) => {
+    const then = withWaiting(place, waiting, now)
+    return { ...then, state: cycleState({ ...then, asked: undefined }, now) }
+  }
+  const pressed = (...inputs: CyclePressInput[]) => inputs.map((input) => ({ what: 'press' as const, input }))
 
   it('an end and the next beginning move the place on to its warm half, once and in order', () => {
-    const ended = { ...half, id: 'a', press: 'end' as const, claimedAt: after(16) }
     const begun = { ...half, half: 'warm' as const, id: 'b', press: 'begin' as const, claimedAt: after(17) }
-    expect(state([ended], after(18))).toMatchObject({ kind: 'waiting', half: 'warm', since: after(16) })
+    expect(stands(pressed(end), after(18)).state).toMatchObject({
+      ...{ kind: 'waiting', half: 'warm', since: after(16) },
+    })
     const running = { kind: 'running', half: 'warm', begunAt: after(17), begunBy: 'you', hours: 1 }
-    expect(state([ended, begun], after(18))).toMatchObject(running)
+    expect(stands(pressed(end, begun), after(18)).state).toMatchObject(running)
   })
 
   it('a device whose clock is ahead presses nothing in the future', () => {
     const held = { ...half, id: 'c', press: 'hold' as const, reason: 'weekend', claimedAt: after(30) }
-    expect(state([held], after(2))).toMatchObject({ hold: { since: after(2), reason: 'weekend', by: 'you' } })
+    expect(stands(pressed(held), after(2)).state).toMatchObject({
+      hold: { since: after(2), reason: 'weekend', by: 'you' },
+    })
   })
 
   it('an end without a beginning changes nothing', () => {
     const ended = { ...half, half: 'warm' as const, id: 'd', press: 'end' as const, claimedAt: after(3) }
-    expect(state([ended], after(4))).toMatchObject({ kind: 'running', half: 'cold' })
+    expect(stands(pressed(ended), after(4)).state).toMatchObject({ kind: 'running', half: 'cold' })
+  })
+
+  it('an end that is corrected there counts as corrected, and the one before stays beside it', () => {
+    const times = { begunAt: friday, endedAt: after(15), reachedC: -11 }
+    const input = { ...change, ...times, id: 'e', change: 'correct' as const }
+    const { steps, past, state } = stands([...pressed(end), { what: 'half', id: 'a', input }], after(18))
+    expect(state).toMatchObject({ kind: 'waiting', half: 'warm', since: after(15) })
+    expect(steps).toMatchObject([{ id: 'e', reachedC: -11, correctionReason: 'misread' }])
+    expect(past).toMatchObject([{ id: 'a' }])
+  })
+
+  it('an end taken back leaves the half as not begun, or running where it had not ended', () => {
+    const taken = (what: 'take back' | 'run on') =>
+      stands(
+        [...pressed(end), { what: 'half', id: 'a', input: { ...change, id: 'f', change: what } }],
+        after(18),
+      )
+    expect(taken('take back').state).toMatchObject({ kind: 'waiting', cycle: 1, half: 'cold' })
+    expect(taken('run on').state).toMatchObject({ kind: 'running', half: 'cold', begunAt: friday })
+  })
+
+  it('a corrected begin and a half from paper count as well', () => {
+    const input = { ...change, id: 'g', change: 'correct' as const, begunAt: after(-2) }
+    const corrected = stands([{ what: 'begin', id: 'begun', input }], after(18))
+    expect(corrected.state).toMatchObject({ kind: 'running', hours: 20, begunBy: 'you' })
+    expect(corrected.pastBegins).toMatchObject([{ id: 'begun' }])
+    const back = {
+      what: 'begin' as const,
+      id: 'begun',
+      input: { ...change, id: 'h', change: 'take back' as const },
+    }
+    const paper = { ...half, id: 'i', begunAt: friday, endedAt: after(16) }
+    expect(stands([back, { what: 'paper', input: paper }], after(18)).state).toMatchObject({
+      ...{ kind: 'waiting', cycle: 1, half: 'warm' },
+    })
+  })
+})
+
+describe('what a change does to readings, in words', () => {
+  it.each([
+    [{ doubted: 0, freed: 0 }, false, []],
+    [
+      { doubted: 1, freed: 0 },
+      false,
+      ['One reading taken after it carries a doubt then, until someone answers it.'],
+    ],
+    [
+      { doubted: 0, freed: 3 },
+      false,
+      ['Three readings taken after it carry no doubt because of it any longer.'],
+    ],
+    [
+      { doubted: 0, freed: 0 },
+      true,
+      ['Readings taken after it carry a doubt then, until someone answers it.'],
+    ],
+  ])('%o', (changed, isAhead, expected) => {
+    expect(doubtsChanged(changed, 'then', isAhead)).toEqual(expected)
   })
 })

@@ -1,63 +1,61 @@
 import type { Actor } from '@/lib/auth/actor'
 import type { Trx } from '@/lib/db/client'
 import { refuse } from '@/lib/http/errors'
-import { lockStudy } from '@/lib/series/commands'
 import { capital } from '@/lib/study/rules/words'
-import { findCyclePlace } from '../queries/board'
-import { isCurrentStep } from '../queries/current'
+import type { CyclePlace } from '../queries/board'
+import { misfits } from '../rules/fits'
 import { halfName } from '../rules/refusals'
+import { cycleState, orderOf } from '../rules/state'
 import type { CycleStep } from '../schema'
-import { reachBackFromHalf } from './reach-back'
+import { claimPlace } from './claim-place'
+import { tellingDoubts, type HalfChanged } from './telling-doubts'
 
 /** A whole half of a freeze-thaw cycle, typed later from paper. Sending it twice keeps one. */
-export async function logCycleStep(trx: Trx, actor: Actor, input: CycleStep, now: string) {
-  const place = await trx
-    .selectFrom('studyStation as ss')
-    .innerJoin('study', 'study.id', 'ss.studyId')
-    .innerJoin('station', 'station.id', 'ss.stationId')
-    .select(['ss.isFreezeThaw', 'ss.studyId', 'study.state', 'study.code', 'station.name'])
-    .where('ss.id', '=', input.studyStationId)
-    .executeTakeFirst()
-  if (!place) throw refuse.notFound('There is no such station in a study.')
-  await lockStudy(trx, place.studyId)
-  if (!place.isFreezeThaw)
-    throw refuse.conflict(`${place.name} is no freeze-thaw station, so it has no cycles.`)
-  if (place.state === 'closed')
-    throw refuse.conflict(`Study ${place.code} is closed, so it takes no more cycles.`)
-  if (Date.parse(input.endedAt) > Date.parse(now)) {
-    throw refuse.invalid('A half is logged after it ended, and this end lies ahead. Correct the time.', {
-      endedAt: 'This time lies ahead.',
-    })
+export async function logCycleStep(
+  trx: Trx,
+  actor: Actor,
+  { isConfirmed, ...input }: CycleStep,
+  now: string,
+): Promise<HalfChanged> {
+  const place = await claimPlace(trx, input.studyStationId)
+  if (place.studyState === 'closed')
+    throw refuse.conflict(`Study ${place.studyCode} is closed, so it takes no more cycles.`)
+  if ([...place.steps, ...place.past].some((step) => step.id === input.id))
+    return { id: input.id, doubted: 0, freed: 0 }
+  refuseOutOfTurn(place, input, now)
+  const wrong = misfits(place, input, input, now)
+  const [first] = Object.values(wrong)
+  if (first) throw refuse.invalid(first, wrong)
+  // Both times are claimed: it was typed after the fact.
+  const step = {
+    ...{ ...input, claimedAt: input.endedAt, recordedBy: actor.personId },
+    isFrozenThrough: input.half === 'cold' ? input.isFrozenThrough : null,
   }
-  const logged = await trx
-    .selectFrom('cycleStep')
-    .select(['id', 'half'])
-    .select(isCurrentStep('cycleStep').as('isCurrent'))
-    .where('studyStationId', '=', input.studyStationId)
-    .where('cycle', '=', input.cycle)
-    .execute()
-  if (logged.some((step) => step.id === input.id)) return { id: input.id }
-  if (logged.some((step) => step.half === input.half && step.isCurrent)) {
+  return tellingDoubts(trx, actor, place, { id: step.id, half: step, isConfirmed }, () =>
+    trx.insertInto('cycleStep').values(step).execute(),
+  )
+}
+
+/** From paper comes what was left out before, or the half that is next. */
+function refuseOutOfTurn(place: CyclePlace, input: Pick<CycleStep, 'cycle' | 'half'>, now: string): void {
+  const { cycle, half } = input
+  const logged = place.steps.find((step) => step.cycle === cycle && step.half === half)
+  if (logged)
     throw refuse.conflict(
-      `The ${input.half} half of cycle ${input.cycle} is logged already. Reload to see it.`,
+      `${capital(halfName(input))} is logged already, by ${logged.by}. Reload to see it.`,
+      {
+        by: logged.by,
+      },
     )
-  }
-  const begun = await trx
-    .selectFrom('cyclePress')
-    .select('id')
-    .where('studyStationId', '=', input.studyStationId)
-    .where('cycle', '=', input.cycle)
-    .where('half', '=', input.half)
-    .executeTakeFirst()
-  if (begun) throw refuse.conflict(`${capital(halfName(input))} was begun at the board. End it there.`)
-  await trx
-    .insertInto('cycleStep')
-    // Both times are claimed: it was typed after the fact.
-    .values({ ...input, claimedAt: input.endedAt, recordedBy: actor.personId })
-    .execute()
-  const { id, cycle, half, endedAt, reachedC, coreC, isFrozenThrough } = input
-  const hours = (Date.parse(endedAt) - Date.parse(input.begunAt)) / 3_600_000
-  const kept = { id, cycle, half, endedAt, reachedC, coreC, isFrozenThrough, hours }
-  await reachBackFromHalf(trx, actor, (await findCyclePlace(trx, input.studyStationId))!, kept)
-  return { id }
+  const state = cycleState({ ...place, asked: place.asked ?? undefined }, now)
+  if (state.kind === 'running' && state.cycle === cycle && state.half === half)
+    throw refuse.conflict(`${capital(halfName(input))} was begun at the board. End it there.`)
+  if (cycle > place.cycles)
+    throw refuse.conflict(`This study has ${place.cycles} cycles, and this is cycle ${cycle}. Type another.`)
+  if (state.kind === 'running' && orderOf(input) > orderOf(state))
+    throw refuse.conflict(
+      `${capital(halfName(state))} still runs, since ${state.begunBy} began it. End it first.`,
+    )
+  if (state.kind === 'waiting' && orderOf(input) > orderOf(state))
+    throw refuse.conflict(`Next comes ${halfName(state)}. Type that one first.`)
 }

@@ -1,13 +1,14 @@
 import type { Actor } from '@/lib/auth/actor'
 import type { Trx } from '@/lib/db/client'
 import { AppError, refuse } from '@/lib/http/errors'
-import { lockStudy } from '@/lib/series/commands'
 import { doneAt } from '@/lib/reading/rules/claimed-time'
-import { findCyclePlace, type CyclePlace } from '../queries/board'
+import { isCurrentPress } from '../queries/current'
+import type { CyclePlace } from '../queries/board'
 import { halfName, refuseBegin, refuseUnlessRunning } from '../rules/refusals'
 import { shortfalls } from '../rules/shortfall'
 import { cycleState, type CycleRecord, type Running } from '../rules/state'
 import type { CyclePressed } from '../schema'
+import { claimPlace } from './claim-place'
 import { reachBackFromHalf } from './reach-back'
 
 export type PressAnswer = { id: string; at: string; shortfalls: string[] }
@@ -47,32 +48,35 @@ export async function pressCycle(
       at,
       claimedAt: input.claimedAt ?? null,
       reason: input.press === 'begin' ? '' : input.reason,
+      supersedesId: input.press === 'begin' ? await findTakenBack(trx, input) : null,
       recordedBy: actor.personId,
     })
     .execute()
   return { id: input.id, at, shortfalls: [] }
 }
 
-/** Of two who press at once the second waits here, and then sees what the first has done. */
-async function claimPlace(trx: Trx, studyStationId: string): Promise<CyclePlace> {
-  const found = await findCyclePlace(trx, studyStationId)
-  // Its end may doubt readings, as a jar that is saved may read it: study first, in either case.
-  if (found) await lockStudy(trx, found.studyId)
-  await trx
-    .selectFrom('studyStation')
-    .select('id')
-    .where('id', '=', studyStationId)
-    .forNoKeyUpdate()
-    .executeTakeFirst()
-  const place = await findCyclePlace(trx, studyStationId)
-  if (!place) throw refuse.notFound('There is no such freeze-thaw station in a study.')
-  return place
-}
-
 async function findPress(trx: Trx, { id, press }: CyclePressed) {
   return press === 'end'
     ? trx.selectFrom('cycleStep').select('endedAt as at').where('id', '=', id).executeTakeFirst()
     : trx.selectFrom('cyclePress').select('at').where('id', '=', id).executeTakeFirst()
+}
+
+/** What a half that begins anew stands in the place of: the taking back of its begin before. */
+async function findTakenBack(
+  trx: Trx,
+  { studyStationId, cycle, half }: CyclePressed,
+): Promise<string | null> {
+  const last = await trx
+    .selectFrom('cyclePress')
+    .select('id')
+    .where('studyStationId', '=', studyStationId)
+    .where('cycle', '=', cycle)
+    .where('half', '=', half)
+    .where('press', '=', 'begin')
+    .where('isVoid', '=', true)
+    .orderBy('recordedAt', 'desc')
+    .executeTakeFirst()
+  return last?.id ?? null
 }
 
 type End = { input: Extract<CyclePressed, { press: 'end' }>; at: string; record: CycleRecord }
@@ -107,6 +111,7 @@ async function endHalf(
     .where('cycle', '=', cycle)
     .where('half', '=', half)
     .where('press', '=', 'begin')
+    .where(isCurrentPress('cyclePress'))
     .executeTakeFirstOrThrow()
   await trx
     .insertInto('cycleStep')

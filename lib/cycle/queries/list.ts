@@ -21,6 +21,7 @@ export async function listCycleSteps(db: Db, actor: Actor, studyStationId: strin
       'step.coreC',
       'step.isFrozenThrough',
       'step.heldHours',
+      'step.heldReason',
       'step.claimedAt',
       'step.note',
       'step.recordedAt',
