@@ -4,15 +4,15 @@ import Link from 'next/link'
 import useSWR from 'swr'
 import { Empty } from '@/components/ui/empty'
 import { Heading } from '@/components/ui/heading'
-import type { CycleBoard as Board } from '@/lib/cycle/queries/board'
+import type { CycleBoard as Board, CyclePlace } from '@/lib/cycle/queries/board'
 import { cycleKeys } from '@/lib/cycle/keys'
 import type { Person } from '@/lib/cycle/rules/changing'
 import { Section } from '@/components/ui/section'
 import { fetcher } from '@/lib/http/fetcher'
 import { capital, numberWord } from '@/lib/study/rules/words'
 import { stateOf } from './cycle-words'
-import type { HalfListProps } from './half-list'
-import { Halves } from './halves'
+import { HalfList, type HalfListProps } from './half-list'
+import { HalvesToggle, useHalves } from './halves-toggle'
 import { PlaceRow } from './place-row'
 import { usePress } from './use-press'
 import { useServerClock } from './use-server-clock'
@@ -68,30 +68,37 @@ export function CycleBoard({ person }: { person: Person | null }) {
   )
 }
 
-/** What is through its cycles: one line each, with what is still to be looked at. */
-function Over({ places, ...rest }: { places: Board['places'] } & Omit<HalfListProps, 'place'>) {
+type OverProps = Omit<HalfListProps, 'id' | 'place'>
+
+/** What is through its cycles: one line each, and its halves where somebody asks for them. */
+function Over({ places, ...rest }: { places: Board['places'] } & OverProps) {
   return (
     <Section title="Through their cycles" className="pb-6">
-      <ul className="text-17">
+      <ul data-density="bench" className="text-17">
         {places.map((place) => (
-          <li
-            key={place.id}
-            className="flex min-h-16 flex-wrap items-center justify-between gap-x-6 gap-y-1 border-b border-dashed border-hair"
-          >
-            <span>
-              <Link href={`/studies/${place.studyCode}`} className="font-mono underline underline-offset-4">
-                {place.studyCode}
-              </Link>{' '}
-              {place.studyTitle}
-            </span>
-            <span className="text-soft">
-              all {place.cycles} cycles at the {place.stationName}
-            </span>
-            <Halves place={place} {...rest} />
-          </li>
+          <OverRow key={place.id} place={place} {...rest} />
         ))}
       </ul>
     </Section>
+  )
+}
+
+function OverRow({ place, ...rest }: { place: CyclePlace } & OverProps) {
+  const halves = useHalves(place)
+  return (
+    <li className="flex min-h-16 flex-wrap items-center justify-between gap-x-6 border-b border-dashed border-hair">
+      <span className="min-w-[240px] flex-1">
+        <Link href={`/studies/${place.studyCode}`} className="font-mono underline underline-offset-4">
+          {place.studyCode}
+        </Link>{' '}
+        {place.studyTitle}
+        <span className="block text-soft">
+          all {place.cycles} cycles, {place.stationName}
+        </span>
+      </span>
+      <HalvesToggle {...halves} code={place.studyCode} />
+      {halves.isOpen ? <HalfList id={halves.id} place={place} {...rest} /> : null}
+    </li>
   )
 }
 

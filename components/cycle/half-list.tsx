@@ -5,6 +5,7 @@ import { HalfRow } from './half-row'
 import type { usePress } from './use-press'
 
 export type HalfListProps = {
+  id: string
   place: CyclePlace
   now: string
   zone: string
@@ -14,9 +15,9 @@ export type HalfListProps = {
 }
 
 /** Every half up to the last one that was begun, the last first; one that was left out stands as a gap. */
-export function HalfList({ place, person, ...props }: HalfListProps) {
+export function HalfList({ id, place, person, ...props }: HalfListProps) {
   return (
-    <div className="mt-2 border-t border-hair">
+    <div id={id} className="mt-2 w-full border-t border-hair">
       <ul>
         {halvesOf(place)
           .toReversed()

@@ -42,7 +42,7 @@ export function HalfRow({ person, ...props }: Props) {
   const dialog = { ...props, onClose: () => setAsked(null) }
   return (
     <li className="flex flex-wrap items-start gap-x-5 gap-y-2 border-b border-dashed border-hair py-2.5 text-17">
-      <h3 className="w-[112px] shrink-0 pt-0.5 text-18">
+      <h3 className="w-[84px] shrink-0 pt-0.5 text-18">
         <b>{half.cycle}</b> {half.half}
       </h3>
       <div className="min-w-[220px] flex-1">
@@ -81,7 +81,7 @@ function Entries({ place, half, now, zone }: Shown) {
     <Line
       key={entry.id}
       {...{ entry, now, zone }}
-      text={stepLines(entry, { now, zone }).join(', ')}
+      lines={stepLines(entry, { now, zone })}
       isGone={!place.steps.includes(entry) && !entry.isVoid}
       how={entry.beginPressId === null ? 'from paper, typed' : 'typed'}
     />
@@ -97,7 +97,7 @@ function Begins({ place, half, now, zone, isAll }: Shown & { isAll: boolean }) {
         <Line
           key={begin.id}
           {...{ entry: begin, now, zone }}
-          text={beginLines(begin, { now, zone }).join(', ')}
+          lines={beginLines(begin, { now, zone })}
           isGone={!place.presses.includes(begin) && !begin.isVoid}
           how="typed"
         />
@@ -106,7 +106,7 @@ function Begins({ place, half, now, zone, isAll }: Shown & { isAll: boolean }) {
 
 type LineProps = {
   entry: BoardStep | BoardPress
-  text: string
+  lines: string[]
   how: string
   /** Something else took its place. */
   isGone: boolean
@@ -115,15 +115,19 @@ type LineProps = {
 }
 
 /** An entry with the server's time of it; struck through where it counts no longer. */
-function Line({ entry, text, how, isGone, now, zone }: LineProps) {
+function Line({ entry, lines, how, isGone, now, zone }: LineProps) {
   const { by, recordedAt, correctionReason } = entry
   return (
-    <p className={isGone ? 'text-soft' : ''}>
-      <span className={isGone ? 'line-through' : 'text-18'}>{text}</span>{' '}
-      <span className="text-soft">
+    <p className={`pb-1 ${isGone ? 'text-soft' : ''}`}>
+      {lines.map((line) => (
+        <span key={line} className={`block ${isGone ? 'line-through' : 'text-18'}`}>
+          {line}
+        </span>
+      ))}
+      <span className="block text-soft">
         {how} {whenText(recordedAt, now, zone)} by {by}
+        {correctionReason ? <span className="text-ink">, because {correctionReason}</span> : null}
       </span>
-      {correctionReason ? <>, because {correctionReason}</> : null}
     </p>
   )
 }

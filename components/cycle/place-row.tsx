@@ -12,7 +12,8 @@ import type { Person } from '@/lib/cycle/rules/changing'
 import { whenText } from '@/lib/cycle/rules/half-words'
 import { runningText, stateOf } from './cycle-words'
 import { EndDialog } from './end-dialog'
-import { Halves } from './halves'
+import { HalfList } from './half-list'
+import { HalvesToggle, useHalves } from './halves-toggle'
 import { PaperDialog } from './paper-dialog'
 import { PressDialog } from './press-dialog'
 import type { usePress } from './use-press'
@@ -33,6 +34,7 @@ export function PlaceRow({ place, now, zone, person, presses }: Props) {
   const [error, setError] = useState<unknown>(null)
   const [isBusy, setBusy] = useState(false)
   const state = stateOf(place, now)
+  const halves = useHalves(place)
   const kept = presses.keptAt(place.id)
   const half = state.kind === 'over' ? null : { cycle: state.cycle, half: state.half }
   const name = half && `${half.half} half of cycle ${half.cycle}`
@@ -67,6 +69,7 @@ export function PlaceRow({ place, now, zone, person, presses }: Props) {
             {place.stationName}, {counted(place.jarsInCycle, 'jar')} in cycle
           </span>
         </h2>
+        <HalvesToggle {...halves} code={place.studyCode} />
       </div>
       <div className="mt-3">
         <CycleWave place={place} state={state} />
@@ -127,7 +130,7 @@ export function PlaceRow({ place, now, zone, person, presses }: Props) {
       </div>
       <ErrorNote error={error} />
       <Inspections place={place} />
-      <Halves {...{ place, now, zone, person, presses }} />
+      {halves.isOpen ? <HalfList id={halves.id} {...{ place, now, zone, person, presses }} /> : null}
       {asked === 'end' && state.kind === 'running' ? (
         <EndDialog
           place={place}

@@ -33,7 +33,7 @@ export function DialogFrame({
             {title}
           </Radix.Title>
           <div
-            className={`mt-1 min-h-0 px-5 py-1 [@media(max-height:340px)]:shrink-0 ${fills ? 'flex flex-1 flex-col [@media(max-height:340px)]:min-h-[300px]' : 'overflow-y-auto'}`}
+            className={`mt-1 min-h-0 px-5 py-1 ${isBench ? 'text-17' : ''} [@media(max-height:340px)]:shrink-0 ${fills ? 'flex flex-1 flex-col [@media(max-height:340px)]:min-h-[300px]' : 'overflow-y-auto'}`}
           >
             {sentence ? <p className={`mt-1 ${isBench ? 'text-18' : 'text-15'}`}>{sentence}</p> : null}
             {children ? (

@@ -5,13 +5,14 @@ import { celsius } from './shortfall'
 
 type Clock = { now: string; zone: string }
 
-/** "16:00", and the day where it is another than today. */
+/** "16:00", and the day where it is another than today, the year where it is another than this. */
 export function whenText(instant: string, now: string, zone: string): string {
   const time = new Intl.DateTimeFormat('en-GB', { timeZone: zone, timeStyle: 'short' }).format(
     new Date(instant),
   )
   const day = dayIn(zone, instant)
-  return day === dayIn(zone, now) ? time : `${spokenDay(day)}, ${time}`
+  const today = dayIn(zone, now)
+  return day === today ? time : `${spokenDay(day, day.slice(0, 4) !== today.slice(0, 4))}, ${time}`
 }
 
 export function hoursText(hours: number): string {
