@@ -43,7 +43,12 @@ export function CycleBoard({ person }: { person: Person | null }) {
       {places.length === 0 ? (
         <Empty
           title="Freeze-thaw stations of running studies will stand here"
-          sentence="Each with its cycles, what runs and until when."
+          sentence="Each with its cycles, what runs and until when: they begin with a study whose protocol has a freeze-thaw station."
+          act={
+            <Link href="/studies" className="text-17 underline underline-offset-4">
+              To the studies
+            </Link>
+          }
         />
       ) : (
         <ul className="mt-6">
@@ -88,7 +93,10 @@ function OverRow({ place, ...rest }: { place: CyclePlace } & OverProps) {
   return (
     <li className="flex min-h-16 flex-wrap items-center justify-between gap-x-6 border-b border-dashed border-hair">
       <span className="min-w-[240px] flex-1">
-        <Link href={`/studies/${place.studyCode}`} className="font-mono underline underline-offset-4">
+        <Link
+          href={`/studies/${place.studyCode}`}
+          className="-my-[21px] inline-block py-[21px] font-mono underline underline-offset-4"
+        >
           {place.studyCode}
         </Link>{' '}
         {place.studyTitle}

@@ -6,7 +6,7 @@ import { Button } from '@/components/ui/button'
 import { ErrorNote } from '@/components/ui/error-note'
 import { StationLabel } from '@/components/ui/station-label'
 import type { CyclePlace } from '@/lib/cycle/queries/board'
-import { capital, counted } from '@/lib/study/rules/words'
+import { capital, counted, numberWord } from '@/lib/study/rules/words'
 import { CycleWave } from './cycle-wave'
 import type { Person } from '@/lib/cycle/rules/changing'
 import { whenText } from '@/lib/cycle/rules/half-words'
@@ -57,10 +57,10 @@ export function PlaceRow({ place, now, zone, person, presses }: Props) {
     <li data-density="bench" className="pb-6">
       <div className="flex flex-wrap items-end gap-x-5 gap-y-1 border-b-2 border-dashed border-ink pb-1.5">
         <StationLabel celsius={null} size={50} />
-        <h2 className="min-w-0 flex-1 text-20 leading-tight">
+        <h2 className="min-w-[220px] flex-1 text-20 leading-tight">
           <Link
             href={`/studies/${place.studyCode}`}
-            className="font-mono font-650 underline underline-offset-4"
+            className="-my-[19px] inline-block py-[19px] font-mono font-650 underline underline-offset-4"
           >
             {place.studyCode}
           </Link>{' '}
@@ -167,6 +167,9 @@ export function PlaceRow({ place, now, zone, person, presses }: Props) {
   )
 }
 
+/** Of the jars to look at, so many stand here; all do on the Bench. */
+const shown = 12
+
 /** After a cycle its jars are looked at: the pull's own jars, one press away. */
 function Inspections({ place }: { place: CyclePlace }) {
   const open = place.inspections.filter((jar) => jar.isToRead)
@@ -176,7 +179,7 @@ function Inspections({ place }: { place: CyclePlace }) {
       <span>
         <b>{capital(counted(open.length, 'jar'))} to look at</b> after {open[0]!.label}:
       </span>
-      {open.slice(0, 12).map((jar) => (
+      {open.slice(0, shown).map((jar) => (
         <Link
           key={jar.code}
           href={`/bench/${jar.code}`}
@@ -185,6 +188,11 @@ function Inspections({ place }: { place: CyclePlace }) {
           {jar.code}
         </Link>
       ))}
+      {open.length > shown ? (
+        <Link href="/bench" className="flex min-h-16 items-center underline underline-offset-4">
+          and {numberWord(open.length - shown)} more on the Bench
+        </Link>
+      ) : null}
     </div>
   )
 }

@@ -3,7 +3,8 @@ import { openAs } from './people'
 import { expect, test } from './watch'
 
 // At the freezer, where no network reaches, a half that runs is held over the weekend and goes on: the board moves on by
-// itself, and each press arrives once. One that is ended short says so before it ends.
+// itself, and each press arrives once. One that is ended short says so before it ends, is corrected, and runs on when its end
+// is taken back.
 // A logger's file is shown with its bad row, then taken.
 
 test.use({ serviceWorkers: 'allow' })
@@ -40,8 +41,22 @@ test('A half is held and ended at the board, and a logger’s file is taken', as
   await running.getByRole('button', { name: /^End the/ }).click()
   await dialog.getByLabel(/^Reached/).fill('-4')
   await expect(dialog).toContainText('−4 °C, −10 °C is asked for')
-  await expect(dialog.getByRole('button', { name: 'End it short' })).toBeVisible()
-  await dialog.getByRole('button', { name: 'Leave it' }).click()
+  await dialog.getByRole('button', { name: 'End it short' }).click()
+  await running.getByRole('button', { name: /^All .* halves/ }).click()
+  const half = running.getByRole('listitem').filter({ hasText: /^4 cold/ })
+  await half.getByRole('button', { name: /^Correct/ }).click()
+  await dialog.getByLabel(/^Reached/).fill('-9,5')
+  await dialog.getByRole('radio', { name: 'misread' }).click()
+  await dialog.getByRole('button', { name: 'Correct it' }).click()
+  await dialog.getByRole('button', { name: 'It is so, correct it' }).click()
+  await expect(half.getByText('reached −9.5 °C')).toBeVisible()
+  await expect(half.getByText('reached −4 °C')).toHaveCSS('text-decoration-line', 'line-through')
+  await expect(half).toContainText(/typed .* by Jos .*, because misread/)
+  await half.getByRole('button', { name: /^Take back/ }).click()
+  await dialog.getByRole('radio', { name: 'It has not ended: it runs on' }).check()
+  await dialog.getByRole('radio', { name: 'pressed by mistake' }).click()
+  await dialog.getByRole('button', { name: 'Let it run on' }).click()
+  await expect(running).toContainText(/The cold half of cycle 4, begun .* by Mada/)
 
   await page.goto('/stations')
   await page.getByRole('link', { name: 'oven 3' }).click()
