@@ -299,7 +299,13 @@ describe('what is told later', () => {
       { reachedC: -12.5, heldHours: 2, heldReason: 'weekend', by: formulator.actor.name },
     ])
     expect(past).toHaveLength(2)
-    // It is the formulator's entry now, so a technician leaves it.
+    // It is the formulator's entry now, so a technician leaves it, and is told what stands there.
+    const late = await fix(first.id, change({ version: 2 }))
+    expect(late.body.error).toMatchObject({
+      ...{ status: 412, detail: { by: formulator.actor.name } },
+      sentence: expect.stringContaining('Ask them, or a formulator'),
+    })
+    expect(late.body.error.detail.version).toBeUndefined()
     expect((await fix(first.id, change({ version: 3 }), jos)).status).toBe(403)
   })
 

@@ -35,11 +35,13 @@ export function refuseChange(
     )
   const person = { id: actor.personId, isFormulator: actor.roles.includes('formulator') }
   const why = whyNotChanged(entry, person, clock)
-  if (why) throw refuse.forbidden(why)
+  // Whoever may not change it any longer is told what stands there, too, but not how to write over it.
   if (seen !== version)
-    throw refuse.stale(`${capital(name)} was changed by ${entry.by} since you opened it. Look again.`, {
-      ...{ version, by: entry.by, lines },
-    })
+    throw refuse.stale(
+      `${capital(name)} was changed by ${entry.by} since you opened it. ${why ?? 'Look again.'}`,
+      { ...(why ? {} : { version }), by: entry.by, lines },
+    )
+  if (why) throw refuse.forbidden(why)
 }
 
 /** What was pressed of a half that was taken back counts no more, and stays on record. */
