@@ -43,6 +43,8 @@ test('A half is held and ended at the board, and a logger’s file is taken', as
   await expect(dialog).toContainText('−4 °C, −10 °C is asked for')
   await dialog.getByRole('button', { name: 'End it short' }).click()
   await running.getByRole('button', { name: /^All .* halves/ }).click()
+  // What a correction brings on is asked about first.
+  watch.expectRefusal(/\/api\/cycles\/.*\/correct$/, 409)
   const half = running.getByRole('listitem').filter({ hasText: /^4 cold/ })
   await half.getByRole('button', { name: /^Correct/ }).click()
   await dialog.getByLabel(/^Reached/).fill('-9,5')
