@@ -1,7 +1,7 @@
 'use client'
 
 import { usePathname } from 'next/navigation'
-import { Suspense } from 'react'
+import { Suspense, useState } from 'react'
 import { BenchDay } from '@/components/bench/bench-day'
 import { JarScreen, loadAhead } from '@/components/bench/later'
 import { UndoBar } from '@/components/bench/undo-bar'
@@ -22,6 +22,7 @@ export function BenchApp({ person }: { person: BenchPerson }) {
   const { bench, areDaysKept, refresh } = useBenchData(code)
   const isReady = useReady(areDaysKept)
   const outbox = useOutbox(refresh)
+  const [called, setCalled] = useState<string | null>(null)
   useRememberPerson(person)
   useLoadAhead(loadAhead)
 
@@ -33,14 +34,27 @@ export function BenchApp({ person }: { person: BenchPerson }) {
     )
   return (
     <>
-      <UndoBar outbox={outbox} onOpen={openJar} onChange={refresh} />
+      <UndoBar
+        outbox={outbox}
+        onOpen={openJar}
+        onCall={(jarCode) => {
+          setCalled(jarCode)
+          if (code !== null) openWalk()
+        }}
+        onChange={refresh}
+      />
       {code === null ? (
         <BenchDay
           bench={bench}
           person={person}
           outbox={outbox}
           isReady={isReady}
-          onOpen={openJar}
+          called={called}
+          onCalled={setCalled}
+          onOpen={(jarCode) => {
+            setCalled(null)
+            openJar(jarCode)
+          }}
           onChange={refresh}
         />
       ) : (

@@ -22,20 +22,22 @@ type Props = {
   person: BenchPerson
   outbox: OutboxOnScreen
   isReady: boolean
+  /** By instrument: the jar that was called up. */
+  called: string | null
+  onCalled: (code: string | null) => void
   onOpen: (code: string) => void
   onChange: () => void
 }
 
 /** Today, in the order one walks the stations: jar by jar along the shelf, or one instrument after the other. */
-export function BenchDay({ bench, person, outbox, isReady, onOpen, onChange }: Props) {
+export function BenchDay({ bench, person, outbox, isReady, called, onCalled, onOpen, onChange }: Props) {
   const first = bench.stations.find((s) => s.counts.due + s.counts.resting > 0)?.id ?? null
   const [picked, setPicked] = useState<string | null>(null)
   const [finding, setFinding] = useState<'scanning' | 'typing' | null>(null)
   const [walk, setWalk] = useKept<{ way: 'jar' | 'instrument' }>('walk', { way: 'jar' })
-  const [called, setCalled] = useState<string | null>(null)
   const now = useNow(bench.now)
   const isByInstrument = walk.way === 'instrument' && person.mayLog
-  const openJar = (code: string) => (isByInstrument ? setCalled(code) : onOpen(code))
+  const openJar = (code: string) => (isByInstrument ? onCalled(code) : onOpen(code))
   const jar = useCalledJar(bench, openJar)
   useLabelReader((text) => void jar.call(text))
   const openId = picked ?? first
@@ -72,7 +74,7 @@ export function BenchDay({ bench, person, outbox, isReady, onOpen, onChange }: P
       ) : null}
       {isByInstrument ? (
         <Suspense fallback={<p className="flex-1 p-5">The instruments are being looked up.</p>}>
-          <ByInstrument {...{ bench, person, outbox, onOpen, onChange, called }} onCalled={setCalled} />
+          <ByInstrument {...{ bench, person, outbox, onOpen, onChange, called }} onCalled={onCalled} />
         </Suspense>
       ) : (
         <ol className="mt-3 flex-1">

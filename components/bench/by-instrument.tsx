@@ -8,6 +8,7 @@ import { TinyJar } from '@/components/bench/tiny-jar'
 import { walkSteps } from '@/components/bench/walk-steps'
 import { useKept } from '@/components/device/use-kept'
 import type { OutboxOnScreen } from '@/components/device/use-outbox'
+import { arrowKeys } from '@/components/ui/arrow-keys'
 import type { Bench } from '@/lib/bench/queries/today'
 
 type Props = {
@@ -64,6 +65,7 @@ export function ByInstrument({ bench, person, outbox, called, onCalled, onOpen, 
       <div
         role="tablist"
         aria-label="Which instrument"
+        onKeyDown={arrowKeys}
         className="mt-3 flex gap-3 overflow-x-auto px-4 sm:flex-wrap sm:px-5"
       >
         {steps.map((one) => (

@@ -46,9 +46,12 @@ export function CentrifugePanel({ slot, text, verdict, read, type }: PanelProps)
           picked={text}
           onPick={(value) => type(slot.key, value)}
         />
-        <p className="text-24">
-          or a layer of <b className="text-36">{isWord || text === '' ? '–' : text}</b> mm
-        </p>
+        <NumberField
+          label="Or a layer, mm"
+          density="bench"
+          value={isWord ? '' : text}
+          onText={(typed) => type(slot.key, typed)}
+        />
         <p aria-live="polite" className="min-h-7 font-700 text-alarm">
           {verdict.state === 'impossible' ? verdict.sentence : null}
           {verdict.state === 'value' && verdict.isOut ? verdict.sentence : null}

@@ -1,3 +1,5 @@
+import { arrowKeys } from '@/components/ui/arrow-keys'
+
 type Props<Value extends string> = {
   label: string
   choices: readonly { value: Value; label: string }[]
@@ -16,7 +18,12 @@ export function ChoiceChips<Value extends string>({
   columns = 'sm:grid-cols-3',
 }: Props<Value>) {
   return (
-    <div className={`grid grid-cols-1 gap-3 ${columns}`} role="radiogroup" aria-label={label}>
+    <div
+      className={`grid grid-cols-1 gap-3 ${columns}`}
+      role="radiogroup"
+      aria-label={label}
+      onKeyDown={arrowKeys}
+    >
       {choices.map(({ value, label: text }) => (
         <button
           key={value}

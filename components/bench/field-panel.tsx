@@ -1,6 +1,6 @@
 'use client'
 
-import { useEffect, useRef, type ReactNode } from 'react'
+import { useEffect, useRef, type KeyboardEvent, type ReactNode } from 'react'
 import { KeepButton, whyNotKeep } from '@/components/bench/keep-button'
 import { hasOwnPanel, KindPanel } from '@/components/bench/kind-panel'
 import { LayerExtras } from '@/components/bench/layer-extras'
@@ -55,7 +55,7 @@ export function FieldPanel({ jar, entry, hasNextJar }: Props) {
             <NumberFields jar={jar} entry={entry} group={group} here={here} />
           )
         ) : (
-          <Landing key={entry.at} isWide={isWide}>
+          <Landing key={entry.at} isWide={isWide} onEnter={entry.step}>
             {kind === 'word' ? <WordPanel jar={jar} entry={entry} group={group} /> : null}
             {isWide ? (
               <KindPanel
@@ -100,12 +100,29 @@ export function isOnKeys({ tabs, at }: Pick<JarEntry, 'tabs' | 'at'>): boolean {
   return here !== undefined && here.slot.kind !== 'word' && !hasOwnPanel(here.slot)
 }
 
+type LandingProps = { isWide: boolean; onEnter: () => void; children: ReactNode }
+
 /** The focus comes along where no number is typed, so that the next key is for what is seen. */
-function Landing({ isWide, children }: { isWide: boolean; children: ReactNode }) {
+function Landing({ isWide, onEnter, children }: LandingProps) {
   const place = useRef<HTMLDivElement>(null)
+  /** From one number of the panel to the next, then on. */
+  function enter(event: KeyboardEvent<HTMLDivElement>) {
+    const fields = [...event.currentTarget.querySelectorAll<HTMLInputElement>('input[inputmode]')]
+    const at = fields.findIndex((field) => field === event.target)
+    if (event.key !== 'Enter' || at < 0) return
+    event.preventDefault()
+    const next = fields[at + 1]
+    if (next) next.focus()
+    else onEnter()
+  }
   useEffect(() => place.current?.focus({ preventScroll: true }), [])
   return (
-    <div ref={place} tabIndex={-1} className={`min-w-0 outline-none ${isWide ? 'sm:col-span-2' : ''}`}>
+    <div
+      ref={place}
+      tabIndex={-1}
+      onKeyDown={enter}
+      className={`min-w-0 outline-none ${isWide ? 'sm:col-span-2' : ''}`}
+    >
       {children}
     </div>
   )

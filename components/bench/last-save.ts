@@ -11,6 +11,8 @@ export type LastSave = {
   readings: string[]
   draft: Draft
   draftKey: string
+  /** One attribute of the jar, read by instrument; null where the jar was kept as a whole. */
+  part: { key: string; label: string } | null
   /** On the server, or still only on this tablet. */
   isKeptHere: boolean
   repeats: AssignedRepeat[]

@@ -95,7 +95,7 @@ export function TypedNumber({ tab, isHere, size, onText, onFocus, onEnter }: Typ
             event.preventDefault()
             onEnter()
           }}
-          className={`min-h-16 min-w-0 max-w-full border-0 border-b-[3px] bg-transparent p-0 font-650 leading-[1.1] outline-none ${isHere ? 'border-ink' : 'border-hair'} ${sizes[size]}`}
+          className={`min-h-16 min-w-0 max-w-full border-0 border-b-[3px] bg-transparent p-0 font-650 leading-[1.1] outline-none focus:shadow-[0_3px_0_var(--ink)] ${isHere ? 'border-ink' : 'border-hair'} ${sizes[size]}`}
         />
         <span className="text-26 sm:text-36">{slotUnit(slot)}</span>
       </div>

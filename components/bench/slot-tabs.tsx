@@ -1,6 +1,7 @@
 import { hasOwnPanel } from '@/components/bench/kind-panel'
 import type { FieldTab, JarEntry } from '@/components/bench/use-jar-entry'
 import { slotUnit } from '@/components/bench/verdict'
+import { arrowKeys } from '@/components/ui/arrow-keys'
 
 /** The jar's fields in the order of the protocol; a check mark for what is in. */
 export function SlotTabs({ entry, hasPhotos }: { entry: JarEntry; hasPhotos: boolean }) {
@@ -10,6 +11,7 @@ export function SlotTabs({ entry, hasPhotos }: { entry: JarEntry; hasPhotos: boo
     <div
       role="tablist"
       aria-label="What is measured"
+      onKeyDown={arrowKeys}
       className="mt-2 flex min-w-0 gap-3 overflow-x-auto px-4 sm:px-5 beside:gap-2 beside:px-3"
     >
       {groups.map((group) => (

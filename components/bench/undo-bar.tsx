@@ -2,7 +2,6 @@
 
 import { useEffect, useState } from 'react'
 import { mutate } from 'swr'
-import { isKeptJar } from '@/components/bench/kept-jars'
 import { setLastSave, useLastSave, type LastSave } from '@/components/bench/last-save'
 import { sentenceOf } from '@/components/ui/error-note'
 import { useDevice } from '@/components/device/device-context'
@@ -13,7 +12,13 @@ import { undoSeconds } from '@/lib/pull/rules/undo-seconds'
 import { percentOf } from '@/lib/science/percent'
 import { pullKeys } from '@/lib/pull/keys'
 
-type Props = { outbox: OutboxOnScreen; onOpen: (code: string) => void; onChange: () => void }
+type Props = {
+  outbox: OutboxOnScreen
+  onOpen: (code: string) => void
+  /** Back at the instrument, with this jar in hand. */
+  onCall: (code: string) => void
+  onChange: () => Promise<unknown>
+}
 
 /** After the jump to the next jar: what was kept, so long it can be taken back, and which spare jar it calls for. */
 export function UndoBar(props: Props) {
@@ -21,14 +26,14 @@ export function UndoBar(props: Props) {
   return save ? <Bar key={save.at} save={save} {...props} /> : null
 }
 
-function Bar({ save, outbox, onOpen, onChange }: Props & { save: LastSave }) {
+function Bar({ save, outbox, onOpen, onCall, onChange }: Props & { save: LastSave }) {
   const left = useSecondsLeft(save.at)
   const drafts = useDevice()?.drafts
   const [says, setSays] = useState('')
   const [isBusy, setBusy] = useState(false)
-  const { jar, repeats } = save
+  const { jar, part, repeats } = save
   const isOver = left <= 0
-  const waiting = outbox.items.find((item) => isKeptJar(item) && item.about.pullJarId === jar.pullJarId)
+  const waiting = outbox.items.find((item) => item.draft?.key === save.draftKey)
   // What was not taken is decided in the tray.
   const isRefused = waiting !== undefined && waiting.refusal !== null
 
@@ -46,9 +51,13 @@ function Bar({ save, outbox, onOpen, onChange }: Props & { save: LastSave }) {
       drafts?.change(save.draftKey, () => ({ ...typed, ids: {}, confirmed: [] }))
       if (!waiting)
         await mutate(benchKeys.jar(jar.code), fetcher(benchKeys.jar(jar.code)), { revalidate: false })
+      const refreshed = onChange()
+      // By instrument, a jar is in hand once the Bench asks for it again.
+      if (part) await refreshed
       setLastSave(null)
-      onChange()
-      onOpen(jar.code)
+      if (!part) return onOpen(jar.code)
+      drafts?.change('walk.step', (now) => ({ photographed: [], ...(now as object), key: part.key }))
+      onCall(jar.code)
     } catch (thrown) {
       setSays(sentenceOf(thrown).sentence)
       setBusy(false)
@@ -61,7 +70,7 @@ function Bar({ save, outbox, onOpen, onChange }: Props & { save: LastSave }) {
         <p role="status" className="min-w-0 flex-1 py-2 text-18">
           <b>
             {save.isKeptHere && waiting ? 'Kept on this tablet: ' : 'Kept: '}
-            {jar.name}
+            {part ? `${part.label} of ${jar.name}` : jar.name}
           </b>
           {save.isKeptHere && waiting ? '. It goes out when the network is back.' : ''}
           {says ? <span className="block">{says}</span> : null}

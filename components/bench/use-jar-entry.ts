@@ -111,6 +111,7 @@ export function useJarEntry(options: Options) {
         readings: readings.map((entry) => entry.id),
         draft: sending,
         draftKey,
+        part: part === undefined ? null : { key: part, label: labelOf(part) },
       }
       if (outcome.how === 'sent') done({ ...save, isKeptHere: false, repeats: outcome.answer.repeats })
       // Asked here, because nobody will be at the jar when the entry goes out.

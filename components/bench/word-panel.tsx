@@ -3,6 +3,7 @@
 import { LastValues } from '@/components/bench/last-values'
 import { StartPhoto } from '@/components/bench/start-photo'
 import type { FieldTab, JarEntry } from '@/components/bench/use-jar-entry'
+import { arrowKeys } from '@/components/ui/arrow-keys'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 
 /** Words against the initial: one press each, the same as last time first at hand, then on to what is open. */
@@ -34,6 +35,7 @@ export function WordPanel({ jar, entry, group }: { jar: BenchJarPage; entry: Jar
           key={tab.key}
           className="mt-3 grid grid-cols-1 gap-3 sm:grid-cols-2"
           role="radiogroup"
+          onKeyDown={arrowKeys}
           aria-label={group.length > 1 ? `${field.label} ${tab.slot.replicate}` : field.label}
         >
           {(field.words ?? []).map((word) => (

@@ -126,5 +126,5 @@ export function useBenchData(openCode: string | null) {
     return () => clearInterval(timer)
   }, [device, ask, readBench])
 
-  return { bench, areDaysKept, refresh: useCallback(() => void ask(readBench), [ask, readBench]) }
+  return { bench, areDaysKept, refresh: useCallback(() => ask(readBench), [ask, readBench]) }
 }
