@@ -11,7 +11,7 @@ import { thousands } from '@/lib/science/methods/thousands'
 
 const names = { rpm: 'rpm', radiusMm: 'Radius, mm', minutes: 'Minutes' } as const
 
-/** The rotor, the force it makes, and what came out of the tube. */
+/** What came out of the tube; below it the rotor, mostly as planned, and the force it makes. */
 export function CentrifugePanel({ slot, text, verdict, read, type }: PanelProps) {
   const rotor = rotorParts.map((part) => {
     const key = besideKey(slot, part)
@@ -21,24 +21,12 @@ export function CentrifugePanel({ slot, text, verdict, read, type }: PanelProps)
   const g = rpm && radiusMm && rpm > 0 && radiusMm > 0 ? centrifuge({ rpm, radiusMm }).rcf : null
   const isWord = tubeWords.some((word) => word === text)
   return (
-    <div className="grid gap-x-7 gap-y-4 sm:grid-cols-[minmax(0,1fr)_300px]">
+    <div className="grid gap-x-7 gap-y-4 sm:grid-cols-[minmax(0,1fr)_300px] beside:grid-cols-[minmax(0,1fr)_252px]">
       <div className="grid content-start gap-4">
         <PanelHead slot={slot} />
         <p className="border-l-4 border-ink pl-3 font-650">
           Balance the rotor: equal tubes opposite each other, lid shut until it stands.
         </p>
-        <div className="grid grid-cols-3 gap-3">
-          {rotor.map(({ part, key, text: shown }) => (
-            <NumberField
-              key={part}
-              label={names[part]}
-              density="bench"
-              value={shown}
-              onText={(typed) => type(key, typed)}
-            />
-          ))}
-        </div>
-        {g === null ? null : <p className="text-20">{thousands(g.toFixed(0))} times gravity</p>}
         <ChoiceChips
           label="What the tube shows"
           columns="grid-cols-2 sm:grid-cols-2"
@@ -56,6 +44,19 @@ export function CentrifugePanel({ slot, text, verdict, read, type }: PanelProps)
           {verdict.state === 'impossible' ? verdict.sentence : null}
           {verdict.state === 'value' && verdict.isOut ? verdict.sentence : null}
         </p>
+        <div className="grid grid-cols-3 gap-3">
+          {rotor.map(({ part, key, text: shown }) => (
+            <NumberField
+              key={part}
+              label={names[part]}
+              density="bench"
+              value={shown}
+              className="px-2"
+              onText={(typed) => type(key, typed)}
+            />
+          ))}
+        </div>
+        {g === null ? null : <p className="text-20">{thousands(g.toFixed(0))} times gravity</p>}
       </div>
       <NumberPad onKey={(key) => type(slot.key, afterKey(isWord ? '' : text, key))} />
     </div>
