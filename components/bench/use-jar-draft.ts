@@ -1,5 +1,5 @@
 import { useCallback, useMemo } from 'react'
-import { dayInstrument, instrumentKind, type ChosenInstruments } from '@/components/bench/day-instrument'
+import { dayInstrument, type ChosenInstruments } from '@/components/bench/day-instrument'
 import {
   emptyDraft,
   entriesOf,
@@ -12,6 +12,7 @@ import {
 import { useKept } from '@/components/device/use-kept'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 import type { Conditions } from '@/lib/reading/rules/conditions'
+import { instrumentKind } from '@/lib/reading/rules/instrument-kind'
 import type { PhotoLinesOfReading } from '@/lib/reading/schema/photo-lines'
 import { separationOfLines } from '@/lib/science/photo-lines'
 
@@ -75,7 +76,7 @@ export function useJarDraft(jar: BenchJarPage, part: string | undefined) {
   }
 
   function chooseInstrument(slot: Slot, id: string) {
-    const kind = instrumentKind(slot)
+    const kind = instrumentKind(slot.field.attribute)
     if (kind) setChosen({ [kind]: id })
     setDraft((d) => ({ ...d, instruments: { ...d.instruments, [entryKey(slot)]: id } }))
   }

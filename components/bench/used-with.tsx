@@ -2,11 +2,11 @@
 
 import { useState } from 'react'
 import { ConditionsDialog } from '@/components/bench/conditions-dialog'
-import { instrumentKind } from '@/components/bench/day-instrument'
 import { conditionsUsed, type Slot } from '@/components/bench/draft'
 import type { JarEntry } from '@/components/bench/use-jar-entry'
 import type { BenchJarPage } from '@/lib/bench/queries/jar'
 import { conditionKeys, conditionWords } from '@/lib/reading/rules/conditions'
+import { instrumentKind } from '@/lib/reading/rules/instrument-kind'
 import { shortDay } from '@/lib/report/rules'
 
 type Props = { jar: BenchJarPage; entry: JarEntry; slot: Slot }
@@ -14,7 +14,7 @@ type Props = { jar: BenchJarPage; entry: JarEntry; slot: Slot }
 /** With which instrument and under which conditions, in one line; changed where they are not as at the start. */
 export function UsedWith({ jar, entry, slot }: Props) {
   const [isChanging, setChanging] = useState(false)
-  const kind = instrumentKind(slot)
+  const kind = instrumentKind(slot.field.attribute)
   const instruments = jar.instruments.filter((one) => one.kind === kind)
   const chosen = entry.instrumentOf(slot)
   const used = conditionsUsed(slot, entry.draft)

@@ -70,6 +70,34 @@ async function readUnder(detail: object, instrument: object = {}) {
   return answer.body.readings.find((one: { attribute: string }) => one.attribute === 'viscosity')
 }
 
+it('an instrument that cannot have read it is refused, at the jar and in a correction, and nothing is kept', async () => {
+  const jar = await jarOf(25, 1)
+  const body = measured(study, jar, { torque: null })
+  const viscosity = {
+    ...{ id: newId(), attribute: 'viscosity', typed: '65', instrumentId: study.meterId },
+    detail: { torquePercent: 65 },
+    isConfirmed: true,
+  }
+  const refused = await keep(jar, { ...body, readings: [...body.readings, viscosity] })
+  expect(refused.status).toBe(422)
+  expect(refused.body.fields[`readings.${body.readings.length}.instrumentId`]).toMatch(
+    /^Viscosity is read with a viscometer, and .+ is a pH meter\. Choose another\.$/,
+  )
+
+  const right = { ...viscosity, instrumentId: study.viscometerId }
+  const kept = await keep(jar, { ...body, readings: [...body.readings, right] })
+  expect(kept.status).toBe(200)
+  const { id } = kept.body.readings.find((one: { attribute: string }) => one.attribute === 'viscosity')
+  const change = {
+    typed: '65',
+    detail: { torquePercent: 65 },
+    isConfirmed: true,
+    instrumentId: study.meterId,
+  }
+  expect((await mend(id, change)).status).toBe(422)
+  expect((await lastOf(id)).id).toBe(id)
+})
+
 describe('doubts of a corrected reading', () => {
   it('a speed typed wrong is corrected: the doubt on the conditions goes with it, and the flag', async () => {
     const reading = await readUnder({ rpm: 10 })

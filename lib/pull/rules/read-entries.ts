@@ -3,6 +3,7 @@ import type { PlannedAttribute } from '@/lib/protocol/schema'
 import { plannedFor } from '@/lib/bench/rules'
 import { attributeName } from '@/lib/reading/schema/attributes'
 import type { Entry } from '@/lib/reading/schema/entry'
+import { wrongInstrument } from '@/lib/reading/rules/instrument-kind'
 import { ImpossibleEntry, type EntryValue } from '@/lib/reading/rules/impossible-entry'
 import { valueOf } from '@/lib/reading/rules/value'
 import type { Frame } from '@/lib/series/queries/frame'
@@ -44,6 +45,11 @@ export function readEntries(jar: PullJar, frame: Frame, entries: readonly Entry[
     const instrument = jar.instruments.find((one) => one.id === entry.instrumentId) ?? null
     if (entry.instrumentId && !instrument) {
       fields[`${path}.instrumentId`] = 'There is no such instrument. Choose one from the list.'
+      return []
+    }
+    const wrong = instrument && wrongInstrument({ attribute: entry.attribute, label }, instrument)
+    if (wrong) {
+      fields[`${path}.instrumentId`] = wrong
       return []
     }
     try {

@@ -13,6 +13,7 @@ import { findReading, type ReadingRow } from '../queries/one'
 import { ImpossibleEntry } from '../rules/impossible-entry'
 import { askInstead, doubtsInstead, keptConditions, keptNotes } from '../rules/instead'
 import { refuseChange } from '../rules/may-change'
+import { wrongInstrument } from '../rules/instrument-kind'
 import { valueOf } from '../rules/value'
 import { attributeName, type AttributeKey } from '../schema/attributes'
 import type { Correction, Voiding } from '../schema/change'
@@ -23,6 +24,7 @@ export async function correctReading(trx: Trx, actor: Actor, readingId: string, 
   if (reading.newerId === input.id) return { id: input.id, supersedesId: readingId, ...nothingNew }
   refuseChange(actor, reading)
   await refusePhotoOfOther(trx, reading, input)
+  if (input.instrumentId) refuseWrongInstrument(reading)
   const read = valueInstead(reading, input)
   const ofValue = await judgeInstead(trx, reading, read)
   if (!input.isConfirmed) askInstead(reading, ofValue)
@@ -99,6 +101,13 @@ function placeOf(reading: ReadingRow, actor: Actor) {
     claimedAt: reading.claimedAt,
     recordedBy: actor.personId,
   }
+}
+
+function refuseWrongInstrument({ attribute, instruments }: ReadingRow) {
+  const [instrument] = instruments
+  const wrong =
+    instrument && wrongInstrument({ attribute, label: attributeName(attribute as AttributeKey) }, instrument)
+  if (wrong) throw refuse.invalid(wrong, { instrumentId: wrong })
 }
 
 function valueInstead(reading: ReadingRow, input: Correction) {
