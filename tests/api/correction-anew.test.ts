@@ -80,7 +80,7 @@ it('an instrument that cannot have read it is refused, at the jar and in a corre
   }
   const refused = await keep(jar, { ...body, readings: [...body.readings, viscosity] })
   expect(refused.status).toBe(422)
-  expect(refused.body.fields[`readings.${body.readings.length}.instrumentId`]).toMatch(
+  expect(refused.body.error.fields[`readings.${body.readings.length}.instrumentId`]).toMatch(
     /^Viscosity is read with a viscometer, and .+ is a pH meter\. Choose another\.$/,
   )
 
