@@ -9,6 +9,7 @@ import { RegressionPlot } from '@/components/shelf-case/regression-plot'
 import { RestsOn } from '@/components/shelf-case/rests-on'
 import { SignPanel } from '@/components/shelf-case/sign-panel'
 import { SignatureBox } from '@/components/shelf-case/signature-box'
+import { SinceFrozen } from '@/components/shelf-case/since-frozen'
 import { Weakens } from '@/components/shelf-case/weakens'
 import { Heading } from '@/components/ui/heading'
 import { Section } from '@/components/ui/section'
@@ -68,6 +69,7 @@ export function CaseView({ code, draft, mayPutForward, maySign, whyNotSign, demo
           in it may be relied on; tell the lab manager.
         </p>
       )}
+      <SinceFrozen detail={data} />
       <div className="mt-6 grid grid-cols-1 gap-x-14 gap-y-8 lg:grid-cols-[minmax(0,1fr)_332px]">
         <div className="flex min-w-0 flex-col gap-8">
           <HowFar content={content} months={months} />

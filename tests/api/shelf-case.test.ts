@@ -7,6 +7,7 @@ import { POST as putForward } from '@/app/api/cases/[code]/put-forward/route'
 import { GET as report } from '@/app/api/cases/[code]/report/route'
 import { POST as sign } from '@/app/api/cases/[code]/sign/route'
 import { POST as draft } from '@/app/api/cases/route'
+import { POST as correct } from '@/app/api/readings/[id]/correct/route'
 import { newId } from '@/lib/db/id'
 import { shelfLife } from '@/lib/science/shelf-life'
 import type { CaseContent } from '@/lib/shelf-case/rules/content'
@@ -147,6 +148,33 @@ describe('a case, step by step', () => {
   it('another content than the one seen is not signed', async () => {
     expect((await signAs(people.qa, { contentSha256: 'a'.repeat(64) })).status).toBe(412)
     expect((await signAs(people.qa, { version: 1 })).status).toBe(412)
+  })
+
+  it('whoever signs is told what changed since it was put forward, and the content stays as it was', async () => {
+    const before = (await get(people.qa)).body
+    expect(before.since).toEqual({ changed: 0, added: 0 })
+    const reading = await t.owner
+      .selectFrom('reading')
+      .select(['id', 'typed'])
+      .where('studyId', '=', studyId)
+      .where('attribute', '=', 'ph')
+      .where('studyStationId', 'is not', null)
+      .orderBy('measuredAt', 'desc')
+      .executeTakeFirstOrThrow()
+    const corrected = await call(correct, {
+      cookie: people.formulator.cookie,
+      params: { id: reading.id },
+      body: {
+        id: newId(),
+        typed: reading.typed,
+        reason: 'read again from the paper sheet',
+        isConfirmed: true,
+      },
+    })
+    expect(corrected.status).toBe(200)
+    const after = (await get(people.qa)).body
+    expect(after.since).toEqual({ changed: 1, added: 0 })
+    expect([after.contentSha256, after.state]).toEqual([before.contentSha256, 'put forward'])
   })
 
   it('no report is made before it is signed', async () => {

@@ -1,4 +1,5 @@
 import { createHash } from 'node:crypto'
+import { sql } from 'kysely'
 import type { Db, Trx } from '@/lib/db/client'
 import { isClientOnly, type Actor } from '@/lib/auth/actor'
 import { refuse } from '@/lib/http/errors'
@@ -72,13 +73,25 @@ export async function getCase(db: Db | Trx, actor: Actor, code: string) {
     .orderBy('signedAt')
     .execute()
   const { content, ...facts } = found
+  const since = found.putForwardAt === null ? null : await readSince(db, found.studyId, found.putForwardAt)
   const contentHash = content === null ? null : createHash('sha256').update(content, 'utf8').digest('hex')
   return {
     ...facts,
+    since,
     content: content === null ? null : (JSON.parse(content) as CaseContent),
     isContentWhole: content === null || contentHash === found.contentSha256,
     signatures: signatures.map((s) => ({ ...s, belongs: signatureBelongs(s, found.code, contentHash) })),
   }
+}
+
+/** What the study's record took on after its content was frozen; the content stays as it was. */
+async function readSince(db: Db | Trx, studyId: string, frozenAt: string) {
+  const { rows } = await sql<{ changed: number; added: number }>`
+    select count(*) filter (where supersedes_id is not null)::int as changed,
+      count(*) filter (where supersedes_id is null)::int as added
+    from reading where study_id = ${studyId} and recorded_at > ${frozenAt}
+  `.execute(db)
+  return rows[0] ?? { changed: 0, added: 0 }
 }
 
 /** The content's very bytes, of whatever case the actor may see that was put forward. */
