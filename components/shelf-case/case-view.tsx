@@ -44,6 +44,7 @@ export function CaseView({ code, draft, mayPutForward, maySign, whyNotSign, demo
     content.attributes.find((a) => a.attribute === 'viscosity'),
     ...content.attributes,
   ].find((a) => a?.calc)
+  const standing = content.weakens.filter((w) => w.state === 'stands').length
   const { lead, rest, sentence } = caseHeadline(data, content)
   return (
     <>
@@ -90,7 +91,7 @@ export function CaseView({ code, draft, mayPutForward, maySign, whyNotSign, demo
             title="What weakens it"
             aside={
               <span className="text-soft">
-                {content.weakens.filter((w) => w.state === 'stands').length} stand,{' '}
+                {standing} {standing === 1 ? 'stands' : 'stand'},{' '}
                 {content.weakens.filter((w) => w.state === 'answered').length} answered
               </span>
             }
